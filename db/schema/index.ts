@@ -1,0 +1,7 @@
+export * from './studio'
+export * from './places'
+export * from './materials'
+export * from './schedules'
+export * from './work'
+export * from './plan'
+export * from './telling'

@@ -1,0 +1,106 @@
+import { sql } from 'drizzle-orm'
+import { check, index, integer, primaryKey, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
+import { milestoneNames, planStatuses } from '#shared/terms'
+import type { MilestoneName } from '#shared/terms'
+import { flag, id, instant, oneOf, studioKey, within } from './columns'
+import { place, room } from './places'
+import { member, studio } from './studio'
+import { act, coat, part, turn } from './work'
+
+const studioColumn = () => integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' })
+
+/** When a film will have come so far: the middle, the 90 % and the 98 % time. Null with a reason, never a sentinel. */
+export const prediction = sqliteTable('prediction', {
+  studioId: studioColumn(),
+  coatId: integer('coat_id').notNull(),
+  ordinal: integer('ordinal').notNull(),
+  milestone: text('milestone').$type<MilestoneName>().notNull(),
+  likelyAt: instant('likely_at'),
+  p90At: instant('p90_at'),
+  p98At: instant('p98_at'),
+  reachedAt: instant('reached_at'),
+  reason: text('reason').$type<'below-minimum' | 'too-damp' | 'never' | 'outside-sheet'>(),
+}, t => [
+  primaryKey({ columns: [t.coatId, t.milestone] }), within(t, t.coatId, coat), oneOf('prediction_milestone', t.milestone, milestoneNames),
+  oneOf('prediction_reason', t.reason, ['below-minimum', 'too-damp', 'never', 'outside-sheet']),
+])
+
+export const windowPrediction = sqliteTable('window_prediction', {
+  studioId: studioColumn(),
+  coatId: integer('coat_id').notNull(),
+  ordinal: integer('ordinal').notNull(),
+  opensAt: instant('opens_at'),
+  shutsAt: instant('shuts_at'),
+}, t => [primaryKey({ columns: [t.coatId, t.ordinal] }), within(t, t.coatId, coat)])
+
+/** Somebody fixed this turn's time. Pins outlive plans. */
+export const pin = sqliteTable('pin', {
+  id: id(),
+  studioId: studioColumn(),
+  turnId: integer('turn_id').notNull().unique(),
+  startsAt: instant('starts_at').notNull(),
+  memberId: integer('member_id'),
+  actId: integer('act_id'),
+}, t => [studioKey(t), within(t, t.turnId, turn), within(t, t.memberId, member), within(t, t.actId, act)])
+
+export const plan = sqliteTable('plan', {
+  id: id(),
+  studioId: studioColumn(),
+  madeAt: instant('made_at').notNull(),
+  revision: integer('revision').notNull(),
+  seed: integer('seed').notNull(),
+  status: text('status').$type<'optimal' | 'feasible' | 'infeasible'>().notNull(),
+  objective: text('objective', { mode: 'json' }).$type<Record<string, number>>().notNull(),
+  clashes: text('clashes', { mode: 'json' }).$type<string[]>().notNull(),
+  current: flag('current').notNull(),
+}, t => [studioKey(t), oneOf('plan_status', t.status, planStatuses), uniqueIndex('plan_now').on(t.studioId).where(sql`${t.current} = 1`)])
+
+/** Like work done together: one set-up, one clean-up. */
+export const planSession = sqliteTable('plan_session', {
+  id: id(),
+  studioId: studioColumn(),
+  planId: integer('plan_id').notNull(),
+  family: text('family').notNull(),
+  roomId: integer('room_id'),
+  startsAt: instant('starts_at').notNull(),
+  endsAt: instant('ends_at').notNull(),
+  setupMin: integer('setup_min').notNull(),
+}, t => [studioKey(t), within(t, t.planId, plan), within(t, t.roomId, room)])
+
+/** `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. */
+export const planEntry = sqliteTable('plan_entry', {
+  studioId: studioColumn(),
+  planId: integer('plan_id').notNull(),
+  turnId: integer('turn_id').notNull(),
+  sessionId: integer('session_id'),
+  memberId: integer('member_id'),
+  startsAt: instant('starts_at').notNull(),
+  endsAt: instant('ends_at').notNull(),
+  lastStartAt: instant('last_start_at'),
+  firstFew: integer('first_few'),
+  lastStartFewAt: instant('last_start_few_at'),
+  afterTest: flag('after_test').notNull().default(false),
+}, t => [
+  primaryKey({ columns: [t.planId, t.turnId] }), within(t, t.planId, plan), within(t, t.turnId, turn), within(t, t.sessionId, planSession), within(t, t.memberId, member),
+  check('plan_entry_span', sql`${t.startsAt} <= ${t.endsAt}`), index('plan_entry_when').on(t.planId, t.startsAt),
+])
+
+export const planHold = sqliteTable('plan_hold', {
+  id: id(),
+  studioId: studioColumn(),
+  planId: integer('plan_id').notNull(),
+  partId: integer('part_id').notNull(),
+  placeId: integer('place_id').notNull(),
+  fromAt: instant('from_at').notNull(),
+  toAt: instant('to_at'),
+}, t => [studioKey(t), within(t, t.planId, plan), within(t, t.partId, part), within(t, t.placeId, place)])
+
+export const planChange = sqliteTable('plan_change', {
+  id: id(),
+  studioId: studioColumn(),
+  planId: integer('plan_id').notNull(),
+  turnId: integer('turn_id').notNull(),
+  wasAt: instant('was_at'),
+  isAt: instant('is_at'),
+  why: text('why').notNull(),
+}, t => [studioKey(t), within(t, t.planId, plan), within(t, t.turnId, turn), unique().on(t.planId, t.turnId)])

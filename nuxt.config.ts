@@ -1,0 +1,3 @@
+export default defineNuxtConfig({
+  compatibilityDate: '2026-05-01',
+})

@@ -1,0 +1,72 @@
+/** The closed lists of words of the trade: what the database checks, the forms offer and the messages say. */
+export const roles = ['owner', 'maker', 'helper'] as const
+export type Role = typeof roles[number]
+
+export const placeKinds = ['shelf', 'rail', 'hook', 'turntable', 'rack', 'clamps', 'press', 'bench', 'booth', 'drying cabinet', 'floor'] as const
+export type PlaceKind = typeof placeKinds[number]
+
+export const stepKinds = ['coat', 'glue-up', 'light sanding', 'flat sanding', 'levelling', 'turn over', 'bench work', 'packing'] as const
+export type StepKind = typeof stepKinds[number]
+
+export const coatSizes = ['thin', 'normal', 'full', 'flood'] as const
+export type CoatSize = typeof coatSizes[number]
+
+export const grounds = ['porous', 'primed', 'sealed', 'non-absorbent'] as const
+export type Ground = typeof grounds[number]
+
+export const drivers = ['water', 'joint', 'solvent', 'oxidation', 'reaction', 'coalescence', 'moisture', 'gel'] as const
+export type Driver = typeof drivers[number]
+
+export const milestoneNames = ['set-to-touch', 'dust-free', 'tack-free', 'at-tack', 'dry-to-handle', 'dry-to-sand-lightly', 'dry-to-sand-flat', 'ready-to-recoat', 'out-of-clamps', 'full-strength', 'cured'] as const
+export type MilestoneName = typeof milestoneNames[number]
+
+export const risks = ['likely', 'p90', 'p98'] as const
+export type Risk = typeof risks[number]
+
+export const dustClasses = ['none', 'some', 'much'] as const
+export type DustClass = typeof dustClasses[number]
+
+export const stepStatuses = ['waiting', 'doing', 'resting', 'done', 'set aside', 'left out'] as const
+export type StepStatus = typeof stepStatuses[number]
+
+export const stepOrigins = ['schedule', 'recovery', 'branch', 'unplanned'] as const
+export type StepOrigin = typeof stepOrigins[number]
+
+export const turnKinds = ['work', 'check', 'release'] as const
+export type TurnKind = typeof turnKinds[number]
+
+export const turnStatuses = ['waiting', 'doing', 'done', 'left out'] as const
+export type TurnStatus = typeof turnStatuses[number]
+
+export const holds = ['clamps', 'press', 'weight'] as const
+export type Hold = typeof holds[number]
+
+export const coatKinds = ['coat', 'glue-up'] as const
+export type CoatKind = typeof coatKinds[number]
+
+export const doubtCauses = ['chilled', 'failed', 'unknown'] as const
+export type DoubtCause = typeof doubtCauses[number]
+
+export const airNoteKinds = ['sun', 'shade', 'warm air', 'moving', 'covered'] as const
+export type AirNoteKind = typeof airNoteKinds[number]
+
+export const readingSources = ['note', 'words', 'same', 'file', 'sensor', 'weather'] as const
+export type ReadingSource = typeof readingSources[number]
+
+export const actors = ['member', 'bench', 'sensor', 'system'] as const
+export type Actor = typeof actors[number]
+
+export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'gone', 'withdrawn'] as const
+export type ActKind = typeof actKinds[number]
+
+export const callKinds = ['last moment to start', 'ready', 'before you leave', 'rags'] as const
+export type CallKind = typeof callKinds[number]
+
+export const channels = ['push', 'mail'] as const
+export type Channel = typeof channels[number]
+
+export const reminderStatuses = ['due', 'claimed', 'sent', 'answered', 'withdrawn'] as const
+export const deliveryStatuses = ['queued', 'sending', 'accepted', 'unknown', 'gone', 'failed'] as const
+export const planStatuses = ['optimal', 'feasible', 'infeasible'] as const
+export const sourceKeys = ['S', 'S-', 'M', 'CP', 'calc', 'planning value', 'own'] as const
+export type SourceKey = typeof sourceKeys[number]

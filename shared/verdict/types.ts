@@ -1,0 +1,79 @@
+import type { DoubtCause, Hold } from '#shared/terms'
+import type { ReasonCode } from '#shared/drying/types'
+
+/** A rung as the verdict sees it. Times in ms UTC; `reachedAt` only from a maker or an owner. */
+export interface Moment { likelyAt: number | null, p90At: number | null, p98At: number | null, reachedAt: number | null, reason: ReasonCode | null }
+
+/** One film or glue line that still matters, reduced to what hands need to know. */
+export interface Film {
+  coatId: number
+  material: string | null
+  kind: 'coat' | 'glue-up' | 'size'
+  /** Set to touch. Null when the material is unknown. */
+  touch: Moment | null
+  /** Dry to handle; for a glue out of clamps; for a size cured. Null when unknown. */
+  handle: Moment | null
+  tackFree: Moment | null
+  cured: Moment | null
+  /** For a joint: full strength, before which it may not be strained. */
+  strength: Moment | null
+  mustLieLevel: boolean
+  gloves: boolean
+  /** Held in clamps, in the press or under weight, and nobody has said it is out. */
+  hold: Hold | null
+  doubt: { cause: DoubtCause, fromAt: number } | null
+}
+
+/** What a part is to be held by: `partId` names the part that carries the grip, `carrier` when it stands on one. */
+export interface Grip { name: string, films: number[] }
+
+/** Everything the verdict reads about one part. Parts that move together are judged together. */
+export interface PartFacts {
+  partId: number
+  name: string
+  films: Film[]
+  grip: Grip | null
+  /** Coat ids of films on the grip are in `grip.films`; a grip without films is `[]`. */
+  doing: { by: string, what: string, since: number } | null
+  /** Planned start of the next coat or glue-up that nobody has spoken of yet. */
+  due: { at: number, what: string } | null
+  place: { room: string, place: string } | null
+  missing: { where: string, seenAt: number } | null
+  intake: 'lead' | 'green cloth' | 'mould' | null
+  keepOut: { room: string } | null
+}
+
+export type VerdictKind = 'hands off' | 'ask first' | 'hold by' | 'may be handled'
+export type LimitKind = 'gloves' | 'stack' | 'wrap' | 'glaze' | 'strain'
+
+/** A thing not to do before a time; `until` null means for ever, as far as we know. */
+export interface Limit { kind: LimitKind, until: number | null }
+
+/** Why a verdict says what it says: a code for the message catalogue and what goes into the sentence. */
+export type VerdictReason =
+  | { code: 'keep out', room: string }
+  | { code: 'in hand', by: string, what: string }
+  | { code: 'held', hold: Hold, giveTillAt: number | null }
+  | { code: 'unknown film' }
+  | { code: 'doubt wet', cause: DoubtCause, fromAt: number }
+  | { code: 'doubt', cause: DoubtCause, fromAt: number }
+  | { code: 'wet', material: string | null }
+  | { code: 'no promise', reason: ReasonCode }
+  | { code: 'coat due', at: number, what: string }
+  | { code: 'not there', where: string | null, seenAt: number | null }
+  | { code: 'intake', question: 'lead' | 'green cloth' | 'mould' }
+  | { code: 'grip wet', grip: string }
+  | { code: 'dry' }
+  | { code: 'cut off', since: number }
+
+export interface Verdict {
+  kind: VerdictKind
+  /** The line of the truth table that speaks, 1..13; 0 for a cut-off. */
+  line: number
+  grip: string | null
+  reason: VerdictReason
+  /** When the verdict gets better by itself, and to what; null when only a person can lift it. */
+  betterAt: number | null
+  betterKind: VerdictKind | null
+  limits: Limit[]
+}
