@@ -507,7 +507,7 @@ CREATE TABLE `act` (
 	FOREIGN KEY (`studio_id`,`member_id`) REFERENCES `member`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`replaces_act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`root_act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
-	CONSTRAINT "act_kind" CHECK("act"."kind" in ('batch started', 'began', 'coat on', 'glue-up on', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'gone', 'withdrawn')),
+	CONSTRAINT "act_kind" CHECK("act"."kind" in ('batch started', 'began', 'coat on', 'glue-up on', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone')),
 	CONSTRAINT "act_actor" CHECK("act"."actor" in ('member', 'bench', 'sensor', 'system')),
 	CONSTRAINT "act_member" CHECK(("act"."actor" = 'member') = ("act"."member_id" is not null))
 );
