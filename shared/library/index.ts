@@ -1,0 +1,18 @@
+import { groundMaterials } from '#shared/library/materials/grounds'
+import type { LibraryMaterial, LibrarySchedule } from '#shared/library/types'
+
+/** Every material of the starter library. */
+export const libraryMaterials: readonly LibraryMaterial[] = [...groundMaterials]
+
+/** Every finishing schedule of the starter library. */
+export const librarySchedules: readonly LibrarySchedule[] = []
+
+/** A library material by key, or null. */
+export function findLibraryMaterial(key: string): LibraryMaterial | null {
+  return libraryMaterials.find(material => material.key === key) ?? null
+}
+
+/** A library finishing schedule by key, or null. */
+export function findLibrarySchedule(key: string): LibrarySchedule | null {
+  return librarySchedules.find(schedule => schedule.key === key) ?? null
+}

@@ -1,0 +1,21 @@
+import { describe, expect, it } from 'vitest'
+import { findLibraryMaterial } from '#shared/library/index'
+import { dryingMaterial } from '#shared/library/types'
+
+describe('what the clock takes from a library material', () => {
+  it('keeps the ladder, the limits and the reference climate', () => {
+    const gesso = findLibraryMaterial('acrylic-gesso')
+    expect(gesso).not.toBeNull()
+    if (!gesso) return
+    const drying = dryingMaterial(gesso)
+    expect(drying.reference).toEqual({ tempC: 21, rh: 0.5 })
+    expect(drying.minTempC).toBe(10)
+    // No exponent in the sheet: a coat twice as thick takes twice as long.
+    expect(drying.thicknessExponent).toBe(1)
+    expect(drying.milestones[0]).toEqual({ name: 'set-to-touch', driver: 'water', low: 10, typical: 30, high: 60 })
+  })
+
+  it('says null for what it does not know', () => {
+    expect(findLibraryMaterial('cheese')).toBeNull()
+  })
+})
