@@ -56,7 +56,7 @@ export type ReadingSource = typeof readingSources[number]
 export const actors = ['member', 'bench', 'sensor', 'system'] as const
 export type Actor = typeof actors[number]
 
-export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone'] as const
+export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone'] as const
 export type ActKind = typeof actKinds[number]
 
 export const callKinds = ['last moment to start', 'ready', 'before you leave', 'rags'] as const

@@ -507,7 +507,7 @@ CREATE TABLE `act` (
 	FOREIGN KEY (`studio_id`,`member_id`) REFERENCES `member`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`replaces_act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`root_act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
-	CONSTRAINT "act_kind" CHECK("act"."kind" in ('batch started', 'began', 'coat on', 'glue-up on', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone')),
+	CONSTRAINT "act_kind" CHECK("act"."kind" in ('batch started', 'began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone')),
 	CONSTRAINT "act_actor" CHECK("act"."actor" in ('member', 'bench', 'sensor', 'system')),
 	CONSTRAINT "act_member" CHECK(("act"."actor" = 'member') = ("act"."member_id" is not null))
 );
@@ -938,6 +938,7 @@ CREATE TABLE `turn` (
 	`status` text DEFAULT 'waiting' NOT NULL,
 	`done_at` integer,
 	`doing_member_id` integer,
+	`not_on_at` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`doing_member_id`) REFERENCES `member`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
@@ -1013,6 +1014,7 @@ CREATE TABLE `plan_entry` (
 	`member_id` integer,
 	`starts_at` integer NOT NULL,
 	`ends_at` integer NOT NULL,
+	`due_at` integer NOT NULL,
 	`last_start_at` integer,
 	`first_few` integer,
 	`last_start_few_at` integer,

@@ -67,7 +67,7 @@ export const planSession = sqliteTable('plan_session', {
   setupMin: integer('setup_min').notNull(),
 }, t => [studioKey(t), within(t, t.planId, plan), within(t, t.roomId, room)])
 
-/** `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. */
+/** `dueAt` is the first planned start that nobody has spoken to: re-planning carries it on, so that silence stays visible. `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. */
 export const planEntry = sqliteTable('plan_entry', {
   studioId: studioColumn(),
   planId: integer('plan_id').notNull(),
@@ -76,6 +76,7 @@ export const planEntry = sqliteTable('plan_entry', {
   memberId: integer('member_id'),
   startsAt: instant('starts_at').notNull(),
   endsAt: instant('ends_at').notNull(),
+  dueAt: instant('due_at').notNull(),
   lastStartAt: instant('last_start_at'),
   firstFew: integer('first_few'),
   lastStartFewAt: instant('last_start_few_at'),

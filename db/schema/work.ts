@@ -215,6 +215,7 @@ export const turn = sqliteTable('turn', {
   status: text('status').$type<TurnStatus>().notNull().default('waiting'),
   doneAt: instant('done_at'),
   doingMemberId: integer('doing_member_id'),
+  notOnAt: instant('not_on_at'),
 }, t => [
   studioKey(t), within(t, t.stepId, pieceStep), within(t, t.doingMemberId, member), unique().on(t.stepId, t.ordinal),
   oneOf('turn_kind', t.kind, turnKinds), oneOf('turn_status', t.status, turnStatuses),

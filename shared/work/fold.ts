@@ -1,0 +1,70 @@
+import type { ActKind } from '#shared/terms'
+import { coatOn, enough, glueUpOn, itIsOut, stripped } from '#shared/work/films'
+import { droppedOut, rejoined, windowMissed } from '#shared/work/splices'
+import { began, checkDone, leftOut, notOnYet, resumed, setAside, workDone } from '#shared/work/steps'
+import { air, gone, moved, notThere, seen, touchTest } from '#shared/work/whereabouts'
+import { isFilm, latestAt, startDraft } from '#shared/work/draft'
+import type { Draft } from '#shared/work/draft'
+import type { Folded, Seed, WorkAct } from '#shared/work/types'
+
+type Telling = (draft: Draft, act: WorkAct) => void
+const nothing: Telling = () => {}
+
+/** What each kind of act does to a piece. Acts about a room or an answer change nothing here. */
+const tellings: Record<ActKind, Telling> = {
+  'batch started': moved,
+  'began': began,
+  'coat on': coatOn,
+  'glue-up on': glueUpOn,
+  'not on yet': notOnYet,
+  'it is out': itIsOut,
+  'work done': workDone,
+  'turned over': workDone,
+  'check done': checkDone,
+  'touch test': touchTest,
+  'stripped': stripped,
+  'moved': moved,
+  'not there': notThere,
+  'seen': seen,
+  'set aside': setAside,
+  'resumed': resumed,
+  'left out': leftOut,
+  'dropped out': droppedOut,
+  'rejoined': rejoined,
+  'enough': enough,
+  'window missed': windowMissed,
+  'air': air,
+  'intake answered': nothing,
+  'room opened': nothing,
+  'rags answered': nothing,
+  'gone': gone,
+}
+
+/**
+ * The piece as its acts make it: a pure replay, so that a correction of any act for days back recomputes all that
+ * follows. `acts` are those in force (the last of each chain of corrections, voided ones left out), in any order.
+ */
+export function fold(seed: Seed, acts: readonly WorkAct[]): Folded {
+  const draft = startDraft(seed)
+  for (const act of inOrder(acts)) tellings[act.kind](draft, act)
+  closeRests(draft)
+  const { parts: _, ...folded } = draft
+  return folded
+}
+
+/** By when it was done; two at one instant by the order in which they were first told. */
+function inOrder(acts: readonly WorkAct[]): WorkAct[] {
+  return [...acts].filter(act => act.subjects.length > 0).sort((a, b) => latestAt(a) - latestAt(b) || a.rootId - b.rootId)
+}
+
+/** A film's step is done once what waited for it has begun: nobody says "it has dried". */
+function closeRests(draft: Draft) {
+  const begun = new Set(draft.steps.filter(step => ['doing', 'resting', 'done'].includes(step.status)).map(step => step.key))
+  for (const step of draft.steps) {
+    if (step.status !== 'resting' || !isFilm(step) || step.turns.some(turn => turn.kind === 'work' && turn.status === 'waiting')) continue
+    const held = draft.coats.some(coat => coat.turn?.step === step.key && coat.hold !== null && coat.outAt === null && coat.strippedAt === null)
+    if (held) continue
+    const followed = draft.links.some(link => link.from === step.key && begun.has(link.to))
+    if (followed || (step.hold !== null && draft.coats.some(coat => coat.turn?.step === step.key && coat.outAt !== null))) step.status = 'done'
+  }
+}
