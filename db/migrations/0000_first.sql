@@ -656,7 +656,7 @@ CREATE TABLE `coat_target` (
 	`face_id` integer,
 	`layer` integer NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`part_id`) REFERENCES `part`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`face_id`) REFERENCES `face`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	CONSTRAINT "coat_target_from_one" CHECK("coat_target"."layer" >= 1)
@@ -673,7 +673,7 @@ CREATE TABLE `doubt` (
 	`from_at` integer NOT NULL,
 	`cleared_act_id` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`cleared_act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	CONSTRAINT "doubt_cause" CHECK("doubt"."cause" in ('chilled', 'failed', 'unknown'))
 );
@@ -882,8 +882,8 @@ CREATE TABLE `step_link` (
 	`windowed` integer DEFAULT false NOT NULL,
 	PRIMARY KEY(`from_step_id`, `to_step_id`),
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`from_step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
-	FOREIGN KEY (`studio_id`,`to_step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`from_step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
+	FOREIGN KEY (`studio_id`,`to_step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	CONSTRAINT "step_link_milestone" CHECK("step_link"."milestone" in ('set-to-touch', 'dust-free', 'tack-free', 'at-tack', 'dry-to-handle', 'dry-to-sand-lightly', 'dry-to-sand-flat', 'ready-to-recoat', 'out-of-clamps', 'full-strength', 'cured')),
 	CONSTRAINT "step_link_risk" CHECK("step_link"."risk" in ('likely', 'p90', 'p98'))
 );
@@ -896,7 +896,7 @@ CREATE TABLE `step_target` (
 	`part_id` integer NOT NULL,
 	`face_id` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`part_id`) REFERENCES `part`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`face_id`) REFERENCES `face`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
 );
@@ -915,7 +915,7 @@ CREATE TABLE `touch_test` (
 	`by_role` text NOT NULL,
 	`forecast` text,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`witness_id`) REFERENCES `witness`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	CONSTRAINT "touch_test_milestone" CHECK("touch_test"."milestone" in ('set-to-touch', 'dust-free', 'tack-free', 'at-tack', 'dry-to-handle', 'dry-to-sand-lightly', 'dry-to-sand-flat', 'ready-to-recoat', 'out-of-clamps', 'full-strength', 'cured')),
@@ -940,7 +940,7 @@ CREATE TABLE `turn` (
 	`doing_member_id` integer,
 	`not_on_at` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`step_id`) REFERENCES `piece_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`doing_member_id`) REFERENCES `member`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	CONSTRAINT "turn_kind" CHECK("turn"."kind" in ('work', 'check', 'release')),
 	CONSTRAINT "turn_status" CHECK("turn"."status" in ('waiting', 'doing', 'done', 'left out')),
@@ -956,7 +956,7 @@ CREATE TABLE `witness` (
 	`coat_id` integer NOT NULL,
 	`name` text NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
+	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade
 );
 --> statement-breakpoint
 CREATE UNIQUE INDEX `witness_studio_id_id_unique` ON `witness` (`studio_id`,`id`);--> statement-breakpoint
@@ -968,7 +968,7 @@ CREATE TABLE `pin` (
 	`member_id` integer,
 	`act_id` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`turn_id`) REFERENCES `turn`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`turn_id`) REFERENCES `turn`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`member_id`) REFERENCES `member`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`act_id`) REFERENCES `act`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
 );
@@ -1000,8 +1000,8 @@ CREATE TABLE `plan_change` (
 	`is_at` integer,
 	`why` text NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
-	FOREIGN KEY (`studio_id`,`turn_id`) REFERENCES `turn`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
+	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
+	FOREIGN KEY (`studio_id`,`turn_id`) REFERENCES `turn`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade
 );
 --> statement-breakpoint
 CREATE UNIQUE INDEX `plan_change_studio_id_id_unique` ON `plan_change` (`studio_id`,`id`);--> statement-breakpoint
@@ -1021,8 +1021,8 @@ CREATE TABLE `plan_entry` (
 	`after_test` integer DEFAULT false NOT NULL,
 	PRIMARY KEY(`plan_id`, `turn_id`),
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
-	FOREIGN KEY (`studio_id`,`turn_id`) REFERENCES `turn`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
+	FOREIGN KEY (`studio_id`,`turn_id`) REFERENCES `turn`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`session_id`) REFERENCES `plan_session`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`member_id`) REFERENCES `member`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	CONSTRAINT "plan_entry_span" CHECK("plan_entry"."starts_at" <= "plan_entry"."ends_at")
@@ -1038,7 +1038,7 @@ CREATE TABLE `plan_hold` (
 	`from_at` integer NOT NULL,
 	`to_at` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`part_id`) REFERENCES `part`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`place_id`) REFERENCES `place`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
 );
@@ -1054,7 +1054,7 @@ CREATE TABLE `plan_session` (
 	`ends_at` integer NOT NULL,
 	`setup_min` integer NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`plan_id`) REFERENCES `plan`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`room_id`) REFERENCES `room`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
 );
 --> statement-breakpoint
@@ -1071,7 +1071,7 @@ CREATE TABLE `prediction` (
 	`reason` text,
 	PRIMARY KEY(`coat_id`, `milestone`),
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
+	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade,
 	CONSTRAINT "prediction_milestone" CHECK("prediction"."milestone" in ('set-to-touch', 'dust-free', 'tack-free', 'at-tack', 'dry-to-handle', 'dry-to-sand-lightly', 'dry-to-sand-flat', 'ready-to-recoat', 'out-of-clamps', 'full-strength', 'cured')),
 	CONSTRAINT "prediction_reason" CHECK("prediction"."reason" in ('below-minimum', 'too-damp', 'never', 'outside-sheet'))
 );
@@ -1084,7 +1084,7 @@ CREATE TABLE `window_prediction` (
 	`shuts_at` integer,
 	PRIMARY KEY(`coat_id`, `ordinal`),
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
-	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action
+	FOREIGN KEY (`studio_id`,`coat_id`) REFERENCES `coat`(`studio_id`,`id`) ON UPDATE no action ON DELETE cascade
 );
 --> statement-breakpoint
 CREATE TABLE `cause` (

@@ -26,6 +26,11 @@ export function within(row: { studioId: AnySQLiteColumn }, column: AnySQLiteColu
   return foreignKey({ columns: [row.studioId, column], foreignColumns: [target.studioId, target.id] })
 }
 
+/** The same for a row that is a piece of another and goes with it. */
+export function belongsTo(row: { studioId: AnySQLiteColumn }, column: AnySQLiteColumn, target: StudioRow) {
+  return within(row, column, target).onDelete('cascade')
+}
+
 /** Allows a text column only the listed words. The words are ours, never a user's. */
 export function oneOf(name: string, column: AnySQLiteColumn, words: readonly string[]) {
   return check(name, sql`${column} in (${sql.raw(words.map(word => `'${word}'`).join(', '))})`)

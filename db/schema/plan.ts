@@ -2,7 +2,7 @@ import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
 import { milestoneNames, planStatuses } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
-import { flag, id, instant, oneOf, studioKey, within } from './columns'
+import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { place, room } from './places'
 import { member, studio } from './studio'
 import { act, coat, part, turn } from './work'
@@ -21,7 +21,7 @@ export const prediction = sqliteTable('prediction', {
   reachedAt: instant('reached_at'),
   reason: text('reason').$type<'below-minimum' | 'too-damp' | 'never' | 'outside-sheet'>(),
 }, t => [
-  primaryKey({ columns: [t.coatId, t.milestone] }), within(t, t.coatId, coat), oneOf('prediction_milestone', t.milestone, milestoneNames),
+  primaryKey({ columns: [t.coatId, t.milestone] }), belongsTo(t, t.coatId, coat), oneOf('prediction_milestone', t.milestone, milestoneNames),
   oneOf('prediction_reason', t.reason, ['below-minimum', 'too-damp', 'never', 'outside-sheet']),
 ])
 
@@ -31,7 +31,7 @@ export const windowPrediction = sqliteTable('window_prediction', {
   ordinal: integer('ordinal').notNull(),
   opensAt: instant('opens_at'),
   shutsAt: instant('shuts_at'),
-}, t => [primaryKey({ columns: [t.coatId, t.ordinal] }), within(t, t.coatId, coat)])
+}, t => [primaryKey({ columns: [t.coatId, t.ordinal] }), belongsTo(t, t.coatId, coat)])
 
 /** Somebody fixed this turn's time. Pins outlive plans. */
 export const pin = sqliteTable('pin', {
@@ -41,7 +41,7 @@ export const pin = sqliteTable('pin', {
   startsAt: instant('starts_at').notNull(),
   memberId: integer('member_id'),
   actId: integer('act_id'),
-}, t => [studioKey(t), within(t, t.turnId, turn), within(t, t.memberId, member), within(t, t.actId, act)])
+}, t => [studioKey(t), belongsTo(t, t.turnId, turn), within(t, t.memberId, member), within(t, t.actId, act)])
 
 export const plan = sqliteTable('plan', {
   id: id(),
@@ -65,7 +65,7 @@ export const planSession = sqliteTable('plan_session', {
   startsAt: instant('starts_at').notNull(),
   endsAt: instant('ends_at').notNull(),
   setupMin: integer('setup_min').notNull(),
-}, t => [studioKey(t), within(t, t.planId, plan), within(t, t.roomId, room)])
+}, t => [studioKey(t), belongsTo(t, t.planId, plan), within(t, t.roomId, room)])
 
 /** `dueAt` is the first planned start that nobody has spoken to: re-planning carries it on, so that silence stays visible. `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. */
 export const planEntry = sqliteTable('plan_entry', {
@@ -82,7 +82,7 @@ export const planEntry = sqliteTable('plan_entry', {
   lastStartFewAt: instant('last_start_few_at'),
   afterTest: flag('after_test').notNull().default(false),
 }, t => [
-  primaryKey({ columns: [t.planId, t.turnId] }), within(t, t.planId, plan), within(t, t.turnId, turn), within(t, t.sessionId, planSession), within(t, t.memberId, member),
+  primaryKey({ columns: [t.planId, t.turnId] }), belongsTo(t, t.planId, plan), belongsTo(t, t.turnId, turn), within(t, t.sessionId, planSession), within(t, t.memberId, member),
   check('plan_entry_span', sql`${t.startsAt} <= ${t.endsAt}`), index('plan_entry_when').on(t.planId, t.startsAt),
 ])
 
@@ -94,7 +94,7 @@ export const planHold = sqliteTable('plan_hold', {
   placeId: integer('place_id').notNull(),
   fromAt: instant('from_at').notNull(),
   toAt: instant('to_at'),
-}, t => [studioKey(t), within(t, t.planId, plan), within(t, t.partId, part), within(t, t.placeId, place)])
+}, t => [studioKey(t), belongsTo(t, t.planId, plan), within(t, t.partId, part), within(t, t.placeId, place)])
 
 export const planChange = sqliteTable('plan_change', {
   id: id(),
@@ -104,4 +104,4 @@ export const planChange = sqliteTable('plan_change', {
   wasAt: instant('was_at'),
   isAt: instant('is_at'),
   why: text('why').notNull(),
-}, t => [studioKey(t), within(t, t.planId, plan), within(t, t.turnId, turn), unique().on(t.planId, t.turnId)])
+}, t => [studioKey(t), belongsTo(t, t.planId, plan), belongsTo(t, t.turnId, turn), unique().on(t.planId, t.turnId)])

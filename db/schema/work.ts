@@ -2,7 +2,7 @@ import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
 import { actKinds, actors, airNoteKinds, coatKinds, coatSizes, doubtCauses, dustClasses, grounds, holds, milestoneNames, placeKinds, risks, roles, stepKinds, stepOrigins, stepStatuses, turnKinds, turnStatuses } from '#shared/terms'
 import type { ActKind, Actor, AirNoteKind, CoatKind, CoatSize, DoubtCause, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, Role, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
-import { flag, id, instant, oneOf, studioKey, within } from './columns'
+import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { materialVersion, mix, tin } from './materials'
 import { carrier, place, room } from './places'
 import { scheduleStep, scheduleVersion } from './schedules'
@@ -187,7 +187,7 @@ export const stepTarget = sqliteTable('step_target', {
   stepId: integer('step_id').notNull(),
   partId: integer('part_id').notNull(),
   faceId: integer('face_id'),
-}, t => [studioKey(t), within(t, t.stepId, pieceStep), within(t, t.partId, part), within(t, t.faceId, face), index('step_target_of_step').on(t.stepId)])
+}, t => [studioKey(t), belongsTo(t, t.stepId, pieceStep), within(t, t.partId, part), within(t, t.faceId, face), index('step_target_of_step').on(t.stepId)])
 
 export const stepLink = sqliteTable('step_link', {
   studioId: studioColumn(),
@@ -197,7 +197,7 @@ export const stepLink = sqliteTable('step_link', {
   risk: text('risk').$type<Risk>().notNull(),
   windowed: flag('windowed').notNull().default(false),
 }, t => [
-  primaryKey({ columns: [t.fromStepId, t.toStepId] }), within(t, t.fromStepId, pieceStep), within(t, t.toStepId, pieceStep),
+  primaryKey({ columns: [t.fromStepId, t.toStepId] }), belongsTo(t, t.fromStepId, pieceStep), belongsTo(t, t.toStepId, pieceStep),
   oneOf('step_link_milestone', t.milestone, milestoneNames), oneOf('step_link_risk', t.risk, risks), index('step_link_to').on(t.toStepId),
 ])
 
@@ -217,7 +217,7 @@ export const turn = sqliteTable('turn', {
   doingMemberId: integer('doing_member_id'),
   notOnAt: instant('not_on_at'),
 }, t => [
-  studioKey(t), within(t, t.stepId, pieceStep), within(t, t.doingMemberId, member), unique().on(t.stepId, t.ordinal),
+  studioKey(t), belongsTo(t, t.stepId, pieceStep), within(t, t.doingMemberId, member), unique().on(t.stepId, t.ordinal),
   oneOf('turn_kind', t.kind, turnKinds), oneOf('turn_status', t.status, turnStatuses),
   check('turn_check', sql`(${t.kind} = 'check') = (${t.checkAfterMin} is not null)`),
   check('turn_done', sql`(${t.status} = 'done') = (${t.doneAt} is not null)`),
@@ -260,7 +260,7 @@ export const coatTarget = sqliteTable('coat_target', {
   faceId: integer('face_id'),
   layer: integer('layer').notNull(),
 }, t => [
-  studioKey(t), within(t, t.coatId, coat), within(t, t.partId, part), within(t, t.faceId, face),
+  studioKey(t), belongsTo(t, t.coatId, coat), within(t, t.partId, part), within(t, t.faceId, face),
   uniqueIndex('coat_target_layer').on(t.faceId, t.layer).where(sql`${t.faceId} is not null`),
   index('coat_target_of_coat').on(t.coatId), check('coat_target_from_one', sql`${t.layer} >= 1`),
 ])
@@ -273,7 +273,7 @@ export const doubt = sqliteTable('doubt', {
   cause: text('cause').$type<DoubtCause>().notNull(),
   fromAt: instant('from_at').notNull(),
   clearedActId: integer('cleared_act_id'),
-}, t => [studioKey(t), within(t, t.coatId, coat), within(t, t.clearedActId, act), unique().on(t.coatId, t.cause), oneOf('doubt_cause', t.cause, doubtCauses)])
+}, t => [studioKey(t), belongsTo(t, t.coatId, coat), within(t, t.clearedActId, act), unique().on(t.coatId, t.cause), oneOf('doubt_cause', t.cause, doubtCauses)])
 
 /** A scrap coated alongside, to be touched instead of the piece. */
 export const witness = sqliteTable('witness', {
@@ -281,7 +281,7 @@ export const witness = sqliteTable('witness', {
   studioId: studioColumn(),
   coatId: integer('coat_id').notNull(),
   name: text('name').notNull(),
-}, t => [studioKey(t), within(t, t.coatId, coat)])
+}, t => [studioKey(t), belongsTo(t, t.coatId, coat)])
 
 /** A bound, not a time: `reached` by then, or not yet. `forecast` is what was predicted at that moment, kept to measure the model by. */
 export const touchTest = sqliteTable('touch_test', {
@@ -296,7 +296,7 @@ export const touchTest = sqliteTable('touch_test', {
   byRole: text('by_role').$type<Role>().notNull(),
   forecast: text('forecast', { mode: 'json' }).$type<{ likelyAt: number | null, p90At: number | null, p98At: number | null } | null>(),
 }, t => [
-  studioKey(t), within(t, t.coatId, coat), within(t, t.witnessId, witness), within(t, t.actId, act), unique().on(t.actId, t.coatId),
+  studioKey(t), belongsTo(t, t.coatId, coat), within(t, t.witnessId, witness), within(t, t.actId, act), unique().on(t.actId, t.coatId),
   oneOf('touch_test_milestone', t.milestone, milestoneNames), oneOf('touch_test_role', t.byRole, roles), index('touch_test_of_coat').on(t.coatId),
 ])
 
