@@ -1,0 +1,59 @@
+import { eq, inArray } from 'drizzle-orm'
+import type { InferInsertModel } from 'drizzle-orm'
+import { airNote, branch, part, piece, stay } from '~~/db/schema'
+import type { Transaction } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { difference, holds } from '~~/server/work/difference'
+import { storeCoats } from '~~/server/work/store-coats'
+import { storeSteps } from '~~/server/work/store-steps'
+import type { FoldedPiece } from '~~/server/work/refold'
+
+/** Writes the difference between a piece's rows and its fold. Rows that stay keep their numbers. */
+export function storeFold(tx: Transaction, studioId: number, { piece: row, parts, folded }: FoldedPiece) {
+  const partIds = parts.map(each => each.id)
+  const turnIds = storeSteps(tx, studioId, row.id, folded)
+  storeCoats(tx, studioId, row.id, folded, turnIds)
+  turnIds.prune()
+  storeStays(tx, studioId, partIds, folded.stays)
+  storeAirNotes(tx, studioId, partIds, folded.airNotes)
+  storeJoins(tx, studioId, partIds, folded.joins)
+  const branchId = storeBranch(tx, studioId, row, folded.branch)
+  tx.update(piece).set({ version: row.version + 1, goneAt: folded.goneAt, branchId }).where(scoped(piece, studioId, eq(piece.id, row.id))).run()
+}
+
+function storeStays(tx: Transaction, studioId: number, partIds: number[], wanted: FoldedPiece['folded']['stays']) {
+  const rows = tx.select().from(stay).where(scoped(stay, studioId, inArray(stay.partId, partIds))).all()
+  const change = difference(rows, wanted, row => `${row.partId} ${row.fromActId}`, each => `${each.partId} ${each.fromActId}`, holds)
+  if (change.removed.length > 0) tx.delete(stay).where(scoped(stay, studioId, inArray(stay.id, change.removed.map(row => row.id)))).run()
+  // Ends first: a part may stand in one place at a time, and the database says so.
+  for (const each of [...change.changed].sort((a, b) => Number(a.wanted.toAt === null) - Number(b.wanted.toAt === null))) {
+    tx.update(stay).set(each.wanted).where(scoped(stay, studioId, eq(stay.id, each.row.id))).run()
+  }
+  if (change.added.length > 0) tx.insert(stay).values(change.added.map(each => ({ studioId, ...each }))).run()
+}
+
+function storeAirNotes(tx: Transaction, studioId: number, partIds: number[], wanted: FoldedPiece['folded']['airNotes']) {
+  const rows = tx.select().from(airNote).where(scoped(airNote, studioId, inArray(airNote.partId, partIds))).all()
+  const change = difference(rows, wanted, row => `${row.partId} ${row.actId}`, each => `${each.partId} ${each.actId}`, holds)
+  if (change.removed.length > 0) tx.delete(airNote).where(scoped(airNote, studioId, inArray(airNote.id, change.removed.map(row => row.id)))).run()
+  for (const each of change.changed) tx.update(airNote).set(each.wanted).where(scoped(airNote, studioId, eq(airNote.id, each.row.id))).run()
+  if (change.added.length > 0) tx.insert(airNote).values(change.added.map(each => ({ studioId, ...each }))).run()
+}
+
+function storeJoins(tx: Transaction, studioId: number, partIds: number[], joins: FoldedPiece['folded']['joins']) {
+  const rows = tx.select({ id: part.id, intoPartId: part.intoPartId, joinedActId: part.joinedActId }).from(part).where(scoped(part, studioId, inArray(part.id, partIds))).all()
+  for (const row of rows) {
+    const join = joins.find(each => each.partId === row.id)
+    const wanted = { intoPartId: join?.intoPartId ?? null, joinedActId: join?.actId ?? null }
+    if (!holds(row, wanted)) tx.update(part).set(wanted).where(scoped(part, studioId, eq(part.id, row.id))).run()
+  }
+}
+
+function storeBranch(tx: Transaction, studioId: number, row: FoldedPiece['piece'], wanted: FoldedPiece['folded']['branch']): number | null {
+  if (!wanted) return null
+  const known = tx.select().from(branch).where(scoped(branch, studioId, eq(branch.actId, wanted.actId))).get()
+  const values: InferInsertModel<typeof branch> = { studioId, batchId: row.batchId, fromStepKey: wanted.fromStep, actId: wanted.actId, rejoinedActId: wanted.rejoinedActId }
+  if (!known) return tx.insert(branch).values(values).returning({ id: branch.id }).get().id
+  if (!holds(known, values)) tx.update(branch).set(values).where(scoped(branch, studioId, eq(branch.id, known.id))).run()
+  return known.id
+}
