@@ -1,0 +1,32 @@
+/** What the base controls say by themselves. Screens give the rest. */
+export const controlWords = {
+  working: 'One moment',
+  tryAgain: 'Try again',
+  close: 'Close',
+  cancel: 'Leave it',
+  less: 'less',
+  more: 'more',
+  choose: 'Choose',
+  optional: 'may stay empty',
+  on: 'on',
+  off: 'off',
+  caution: 'Caution.',
+  note: 'Note.',
+  when: 'When',
+  timeNow: 'now',
+  timeAgo: 'min ago',
+  timeOther: 'other',
+  timeDay: 'Day',
+  timeClock: 'Time',
+  timeWrong: 'Time: give hours and minutes, such as 13:40, not later than now.',
+} as const
+
+/** "10 min ago"; for a screen reader as for the eye. */
+export function minutesAgo(minutes: number): string {
+  return minutes === 0 ? controlWords.timeNow : `${minutes} ${controlWords.timeAgo}`
+}
+
+/** "Less warmth, down by 0.5 °C": the name of a stepper's key. */
+export function stepName(direction: 'less' | 'more', label: string): string {
+  return `${label}: ${direction}`
+}
