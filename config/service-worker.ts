@@ -1,0 +1,30 @@
+import { join } from 'node:path'
+import { defineNuxtModule } from '@nuxt/kit'
+import { build } from 'vite'
+
+/**
+ * Builds `service-worker/sw.ts` into one classic script served as /sw.js. A precaching module was refused:
+ * the board is useless without the studio's word, so nothing of the shell is kept offline.
+ */
+export default defineNuxtModule({
+  meta: { name: 'stillwet:service-worker' },
+  setup(_options, nuxt) {
+    if (nuxt.options._prepare || nuxt.options.test) return
+    const out = join(nuxt.options.buildDir, 'service-worker')
+    nuxt.hook('nitro:config', async (nitro) => {
+      await build({
+        configFile: false,
+        root: nuxt.options.rootDir,
+        logLevel: 'warn',
+        publicDir: false,
+        resolve: { alias: { '#shared': join(nuxt.options.rootDir, 'shared') } },
+        build: {
+          outDir: out,
+          emptyOutDir: true,
+          lib: { entry: join(nuxt.options.rootDir, 'service-worker/sw.ts'), formats: ['iife'], name: 'stillwetWorker', fileName: () => 'sw.js' },
+        },
+      })
+      nitro.publicAssets = [...nitro.publicAssets ?? [], { dir: out, baseURL: '/', maxAge: 0 }]
+    })
+  },
+})
