@@ -279,6 +279,8 @@ CREATE TABLE `material_version` (
 	`film` text NOT NULL,
 	`solvent` text NOT NULL,
 	`must_lie_level` integer DEFAULT false NOT NULL,
+	`drying_oil` integer DEFAULT false NOT NULL,
+	`isocyanate` integer DEFAULT false NOT NULL,
 	`gloves_until` text,
 	`cautions` text NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,

@@ -24,6 +24,8 @@ export const materialVersion = sqliteTable('material_version', {
   film: text('film').$type<'open' | 'joint'>().notNull(),
   solvent: text('solvent').notNull(),
   mustLieLevel: flag('must_lie_level').notNull().default(false),
+  dryingOil: flag('drying_oil').notNull().default(false),
+  isocyanate: flag('isocyanate').notNull().default(false),
   glovesUntil: text('gloves_until').$type<MilestoneName>(),
   cautions: text('cautions', { mode: 'json' }).$type<string[]>().notNull(),
 }, t => [studioKey(t), within(t, t.materialId, material), unique().on(t.materialId, t.no), oneOf('material_version_film', t.film, ['open', 'joint'])])
