@@ -72,8 +72,8 @@ interface MaterialSpec {
 /** Written once here, so that no material of a kind can be without the cautions of its kind. */
 function kindCautions(spec: MaterialSpec): CautionKey[] {
   const found: CautionKey[] = []
-  if (spec.solvent !== 'water' && spec.solvent !== 'none') found.push('vapour', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can')
-  if (spec.solvent === 'alcohol' || spec.solvent === 'lacquer thinner' || spec.solvent === 'aliphatic solvent') found.push('flames', 'fan')
+  if (spec.solvent !== 'water' && spec.solvent !== 'none') found.push('vapour', 'flames', 'fan', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can')
+  if (spec.solvent === 'alcohol' || spec.solvent === 'lacquer thinner') found.push('pouring')
   if (spec.dryingOil) found.push('oily rags', 'waste can', 'sleeping room')
   if (spec.isocyanate) found.push('isocyanate')
   return found

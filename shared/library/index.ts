@@ -1,8 +1,16 @@
 import { groundMaterials } from '#shared/library/materials/grounds'
+import { lacquerMaterials } from '#shared/library/materials/lacquers'
+import { otherGlueMaterials } from '#shared/library/materials/other-glues'
+import { paintMaterials } from '#shared/library/materials/paints'
+import { sizeMaterials } from '#shared/library/materials/sizes'
+import { varnishMaterials } from '#shared/library/materials/varnishes'
+import { waterGlueMaterials } from '#shared/library/materials/water-glues'
 import type { LibraryMaterial, LibrarySchedule } from '#shared/library/types'
 
 /** Every material of the starter library. */
-export const libraryMaterials: readonly LibraryMaterial[] = [...groundMaterials]
+export const libraryMaterials: readonly LibraryMaterial[] = [
+  ...groundMaterials, ...paintMaterials, ...varnishMaterials, ...lacquerMaterials, ...sizeMaterials, ...waterGlueMaterials, ...otherGlueMaterials,
+]
 
 /** Every finishing schedule of the starter library. */
 export const librarySchedules: readonly LibrarySchedule[] = []

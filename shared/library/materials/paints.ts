@@ -1,0 +1,130 @@
+import { article, days, figure, hours, libraryMaterial, memory, planning, practice, recoat, rung, sheet, support, tradePage } from '#shared/library/build'
+import type { LibraryMaterial } from '#shared/library/types'
+
+const noSmell = 'No tack, no smell.'
+
+/** Paints, enamels and the medium that paper is stuck and covered with. */
+export const paintMaterials: readonly LibraryMaterial[] = [
+  libraryMaterial({
+    key: 'craft-acrylic', name: 'Craft acrylic paint', kind: 'paint', solvent: 'water',
+    reference: [20, 0.5, practice], minTempC: [10, practice], maxRh: [0.75, practice],
+    milestones: [
+      rung('set-to-touch', 'water', [10, 15, 30], sheet('craft acrylic paint')),
+      rung('dust-free', 'water', [12, 20, 40], planning),
+      rung('tack-free', 'water', [20, 40, 80], planning),
+      rung('ready-to-recoat', 'water', [30, 60, 120], practice),
+      rung('dry-to-handle', 'water', [30, 60, 120], practice),
+      rung('dry-to-sand-lightly', 'coalescence', hours(4, 12, 24), practice),
+      rung('dry-to-sand-flat', 'coalescence', hours(12, 24, 48), planning),
+      rung('cured', 'coalescence', days(3, 14, 21), practice),
+    ],
+    figures: [figure('wet film', [50, 80, 120], practice), figure('spread rate', [8, 12, 18], practice), figure('VOC', [5, 30, 60], memory)],
+    cautions: ['blocking', 'sanding dust'],
+  }),
+  libraryMaterial({
+    key: 'heavy-body-acrylic', name: 'Heavy-body acrylic paint', kind: 'paint', solvent: 'water',
+    reference: [21, 0.5, sheet('heavy-body acrylic paint')], minTempC: [10, sheet('heavy-body acrylic paint')], maxRh: [0.75, practice],
+    milestones: [
+      rung('set-to-touch', 'water', [10, 30, 60], practice),
+      rung('ready-to-recoat', 'water', [20, 45, 90], planning),
+      rung('tack-free', 'water', [30, 60, 240], planning),
+      rung('dry-to-handle', 'water', hours(1, 4, 24), practice),
+      rung('dry-to-sand-lightly', 'coalescence', days(1, 2, 3), practice),
+      rung('dry-to-sand-flat', 'coalescence', days(2, 3, 7), planning),
+      rung('cured', 'coalescence', days(3, 7, 28), sheet('heavy-body acrylic paint')),
+    ],
+    figures: [figure('wet film', [75, 250, 3000], practice), figure('spread rate', [0.4, 4, 12], practice), figure('VOC', [5, 20, 60], memory)],
+    cautions: ['skin hides wet', 'blocking'],
+  }),
+  libraryMaterial({
+    key: 'milk-paint', name: 'Milk paint (casein and lime)', kind: 'paint', solvent: 'water',
+    reference: [20, 0.5, practice], minTempC: [10, practice], maxRh: [0.8, practice],
+    milestones: [
+      rung('set-to-touch', 'water', [10, 30, 60], sheet('milk paint')),
+      rung('dry-to-handle', 'water', hours(1, 2, 4), practice),
+      rung('ready-to-recoat', 'water', [60, 120, 240], sheet('milk paint')),
+      rung('dry-to-sand-lightly', 'coalescence', hours(4, 12, 24), practice),
+      rung('dry-to-sand-flat', 'coalescence', hours(12, 24, 48), planning),
+      rung('cured', 'coalescence', days(7, 21, 30), practice),
+    ],
+    figures: [figure('wet film', 140, sheet('milk paint')), figure('spread rate', [6, 6.5, 7], sheet('milk paint')), figure('pot life', hours(8, 12, 24), sheet('milk paint')), figure('VOC', 0, practice)],
+    cautions: ['casein lime', 'goes off', 'sanding dust'],
+  }),
+  libraryMaterial({
+    key: 'chalk-paint', name: 'Chalk-type paint', kind: 'paint', solvent: 'water',
+    reference: [20, 0.5, practice], minTempC: [10, practice], maxRh: [0.75, practice],
+    milestones: [
+      rung('set-to-touch', 'water', [5, 15, 60], tradePage('chalk-type paint')),
+      rung('ready-to-recoat', 'water', [20, 60, 120], tradePage('chalk-type paint')),
+      rung('dry-to-handle', 'water', [30, 60, 120], practice),
+      rung('dry-to-sand-lightly', 'coalescence', hours(2, 12, 24), practice),
+      rung('dry-to-sand-flat', 'coalescence', hours(12, 24, 48), planning),
+      rung('cured', 'coalescence', days(1, 14, 30), tradePage('chalk-type paint')),
+    ],
+    figures: [figure('wet film', [80, 95, 110], practice), figure('spread rate', [10, 11.5, 13], practice), figure('VOC', [0, 10, 30], memory)],
+    cautions: ['wax early', 'sanding dust'],
+  }),
+  libraryMaterial({
+    key: 'alkyd-enamel', name: 'Alkyd enamel', kind: 'enamel', solvent: 'mineral spirits', dryingOil: true,
+    reference: [20, 0.65, sheet('alkyd enamel')], minTempC: [5, sheet('alkyd enamel')], maxTempC: [30, sheet('one-pack oil paints')], maxRh: [0.85, sheet('one-pack oil paints')],
+    milestones: [
+      rung('dust-free', 'solvent', hours(2, 2.5, 4), sheet('alkyd enamel')),
+      rung('set-to-touch', 'solvent', hours(6, 7, 8), sheet('alkyd enamel')),
+      rung('tack-free', 'oxidation', hours(7, 10, 16), planning),
+      rung('dry-to-handle', 'oxidation', hours(8, 16, 24), sheet('alkyd enamel')),
+      rung('ready-to-recoat', 'oxidation', hours(8, 16, 24), article('sign enamel'), noSmell),
+      rung('dry-to-sand-lightly', 'oxidation', hours(16, 24, 48), practice),
+      rung('dry-to-sand-flat', 'oxidation', hours(24, 48, 96), planning),
+      rung('cured', 'oxidation', days(21, 24, 28), sheet('alkyd enamel')),
+    ],
+    windows: [recoat(960, 10080, memory, 'Scuff the enamel dull', 15)],
+    figures: [figure('wet film', 75, sheet('alkyd enamel')), figure('spread rate', 15.3, sheet('alkyd enamel')), figure('VOC', [300, 380, 450], memory)],
+    cautions: ['cover slow oil', 'sanding dust'],
+  }),
+  libraryMaterial({
+    key: 'spray-enamel', name: 'Spray enamel', kind: 'enamel', solvent: 'lacquer thinner', dryingOil: true,
+    reference: [21, 0.5, practice], minTempC: [10, sheet('spray enamel')], maxTempC: [32, sheet('spray enamel')], maxRh: [0.65, sheet('spray enamel')],
+    milestones: [
+      rung('set-to-touch', 'solvent', [15, 20, 240], tradePage('spray enamel')),
+      rung('dust-free', 'oxidation', [20, 30, 240], planning),
+      rung('dry-to-handle', 'oxidation', hours(1, 2, 9), tradePage('spray enamel')),
+      rung('dry-to-sand-lightly', 'oxidation', hours(24, 36, 48), practice),
+      rung('ready-to-recoat', 'oxidation', hours(24, 48, 48), support('spray enamel'), noSmell),
+      rung('dry-to-sand-flat', 'oxidation', hours(24, 60, 96), planning),
+      rung('cured', 'oxidation', days(1, 3, 7), article('spray enamel')),
+    ],
+    windows: [
+      recoat(0, 60, support('spray enamel'), 'Wait until it is hard, then scuff it', 15),
+      recoat(2880, null, support('spray enamel')),
+    ],
+    figures: [figure('wet film', [30, 40, 50], practice), figure('spread rate', [4, 7, 10], planning), figure('VOC', [450, 550, 650], memory)],
+    cautions: ['aerosol', 'forbidden middle', 'mixed residue', 'sanding dust'],
+  }),
+  libraryMaterial({
+    key: 'artists-oil', name: 'Artists\' oil paint', kind: 'paint', solvent: 'turpentine', dryingOil: true,
+    reference: [20, 0.5, sheet('artists\' oil paint')], minTempC: [10, practice], maxRh: [0.8, planning],
+    milestones: [
+      rung('set-to-touch', 'oxidation', days(2, 5, 12), sheet('artists\' oil paint')),
+      rung('ready-to-recoat', 'oxidation', days(2, 5, 12), practice, 'Touch dry all over. Fat over lean.'),
+      rung('tack-free', 'oxidation', days(3, 6, 13), planning),
+      rung('dry-to-handle', 'oxidation', days(5, 8, 14), practice),
+      rung('cured', 'oxidation', days(180, 270, 365), sheet('artists\' oil paint'), 'A soft cloth with white spirit takes off no colour at an edge.'),
+    ],
+    figures: [figure('wet film', [50, 150, 500], practice), figure('spread rate', [2, 6.7, 20], planning), figure('VOC', [0, 50, 300], memory)],
+    cautions: ['skin hides wet', 'cover slow oil'],
+  }),
+  libraryMaterial({
+    key: 'decoupage-medium', name: 'Decoupage medium', kind: 'medium', solvent: 'water',
+    reference: [20, 0.5, practice], minTempC: [10, practice], maxRh: [0.75, practice],
+    milestones: [
+      rung('set-to-touch', 'water', [15, 60, 120], tradePage('decoupage medium')),
+      rung('ready-to-recoat', 'water', [20, 60, 120], tradePage('decoupage medium')),
+      rung('dry-to-handle', 'water', hours(2, 3, 4), practice),
+      rung('dry-to-sand-lightly', 'coalescence', hours(18, 24, 36), practice),
+      rung('dry-to-sand-flat', 'coalescence', hours(36, 48, 72), planning),
+      rung('cured', 'coalescence', days(14, 21, 28), tradePage('decoupage medium')),
+    ],
+    figures: [figure('wet film', [80, 100, 120], practice), figure('spread rate', [8, 10, 12.5], planning), figure('VOC', [0, 10, 50], memory)],
+    cautions: ['blocking', 'sanding dust'],
+  }),
+]
