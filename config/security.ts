@@ -22,6 +22,8 @@ export const security = {
       'upgrade-insecure-requests': false,
     },
     strictTransportSecurity: false as const,
+    // Tags are scanned and photos taken from our own pages.
+    permissionsPolicy: { camera: ['self'], 'display-capture': [], fullscreen: ['self'], geolocation: [], microphone: [] },
   },
   // Our own limiter guards sign-in; a general one stops a wall tablet and a maker behind one address.
   rateLimiter: false as const,

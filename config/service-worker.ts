@@ -11,7 +11,11 @@ export default defineNuxtModule({
   setup(_options, nuxt) {
     if (nuxt.options._prepare || nuxt.options.test) return
     const out = join(nuxt.options.buildDir, 'service-worker')
-    nuxt.hook('nitro:config', async (nitro) => {
+    nuxt.hook('nitro:config', (nitro) => {
+      nitro.publicAssets = [...nitro.publicAssets ?? [], { dir: out, baseURL: '/', maxAge: 0 }]
+    })
+    // Not earlier: Nuxt empties its build folder just before.
+    nuxt.hook('build:before', async () => {
       await build({
         configFile: false,
         root: nuxt.options.rootDir,
@@ -24,7 +28,6 @@ export default defineNuxtModule({
           lib: { entry: join(nuxt.options.rootDir, 'service-worker/sw.ts'), formats: ['iife'], name: 'stillwetWorker', fileName: () => 'sw.js' },
         },
       })
-      nitro.publicAssets = [...nitro.publicAssets ?? [], { dir: out, baseURL: '/', maxAge: 0 }]
     })
   },
 })
