@@ -1,0 +1,139 @@
+import type { Air, Reading, RoomAir } from '#shared/drying/types'
+import type { AirTables } from '#shared/air/tables'
+import { tabledDewPoint, tabledSaturation } from '#shared/air/tables'
+import { rhFromDewPoint } from '#shared/air/psychrometrics'
+import type { DayShape, Measured } from '#shared/air/shape'
+import { hourPattern, nightShape, shapeAt } from '#shared/air/shape'
+import type { ZoneClock } from '#shared/air/zone'
+import { localTimeOfDay, zoneClock } from '#shared/air/zone'
+
+const hourMs = 3_600_000
+const longGapMs = 6 * hourMs
+const dayMs = 24 * hourMs
+
+/** A room's air made ready for asking: readings in order with their dew points, and the shape of its day. */
+export interface RoomTrack {
+  /** ms UTC, ascending; empty when nobody ever read the air. */
+  times: Float64Array
+  temps: Float64Array
+  dewPoints: Float64Array
+  /** Extra log sd of each reading: 0 when measured. */
+  doubts: Float64Array
+  shape: DayShape
+  zone: ZoneClock
+  usual: { tempC: number, dewPointC: number }
+}
+
+/** The air at an instant and how well it is known. */
+export interface AirAt extends Air {
+  dewPointC: number
+  /** True before the first reading and where no reading speaks at all. */
+  assumed: boolean
+  /** Hours since the last reading at or before the instant; null when there is none. */
+  hoursSinceReading: number | null
+}
+
+/** Reading of the air by a word: relative humidity 0..1 and the extra log sd such a word carries (a planning value). */
+export const airWords = {
+  dry: { rh: 0.35, doubt: 0.2 }, normal: { rh: 0.5, doubt: 0.2 }, damp: { rh: 0.7, doubt: 0.2 }, wet: { rh: 0.85, doubt: 0.2 },
+} as const
+
+function lerp(from: number, to: number, share: number): number {
+  return from + (to - from) * share
+}
+
+/** Index of the last time at or before `at`; -1 when all are later. */
+export function lastBefore(times: ArrayLike<number>, at: number): number {
+  let low = -1
+  let high = times.length
+  while (high - low > 1) {
+    const middle = (low + high) >> 1
+    if (times[middle]! <= at) low = middle
+    else high = middle
+  }
+  return low
+}
+
+function tempBetween(times: ArrayLike<number>, temps: ArrayLike<number>, i: number, at: number, shape: DayShape, zone: ZoneClock): number {
+  const from = times[i]!
+  const to = times[i + 1]!
+  const share = (at - from) / (to - from)
+  const straight = lerp(temps[i]!, temps[i + 1]!, share)
+  if (to - from <= longGapMs) return straight
+  const swing = (t: number) => shapeAt(shape, localTimeOfDay(zone, t))
+  return straight + swing(at) - lerp(swing(from), swing(to), share)
+}
+
+function tempOf(times: ArrayLike<number>, temps: ArrayLike<number>, at: number, shape: DayShape, zone: ZoneClock, usualC: number): number {
+  const last = times.length - 1
+  const swing = (t: number) => shapeAt(shape, localTimeOfDay(zone, t))
+  if (last < 0) return usualC + swing(at)
+  if (at <= times[0]!) return temps[0]!
+  if (at >= times[last]!) return temps[last]! + swing(at) - swing(times[last]!)
+  return tempBetween(times, temps, lastBefore(times, at), at, shape, zone)
+}
+
+function inOrder(readings: readonly Reading[]): Reading[] {
+  const byTime = new Map<number, Reading>()
+  for (const reading of readings) byTime.set(reading.at, reading)
+  return [...byTime.values()].sort((a, b) => a.at - b.at)
+}
+
+/**
+ * Makes a room ready: dew points, the day's shape (its own pattern once readings cover three distinct local days; before that an
+ * unheated room's night drop), and the temperature of readings given by a word, which follows the thermometer readings around them.
+ * Of two readings at one instant the later in the list counts. Pass `zone` to spare reading the zone's clock changes again.
+ */
+export function roomTrack(room: RoomAir, tables: AirTables, zone?: ZoneClock): RoomTrack {
+  const readings = inOrder(room.readings)
+  const clock = zone ?? zoneClock(room.zone, (readings[0]?.at ?? 0) - dayMs, (readings.at(-1)?.at ?? 0) + 500 * dayMs)
+  const measured: Measured[] = []
+  for (const { at, tempC } of readings) if (tempC !== null) measured.push({ at, tempC })
+  const shape = hourPattern(measured, clock) ?? nightShape(room.heated ? 0 : room.nightDropC)
+  const knownAt = measured.map(m => m.at)
+  const knownC = measured.map(m => m.tempC)
+  const temps = Float64Array.from(readings, r => r.tempC ?? tempOf(knownAt, knownC, r.at, shape, clock, room.usual.tempC))
+  const dewOf = (tempC: number, rh: number) => Math.min(tempC, tabledDewPoint(tables, rh * tabledSaturation(tables, tempC)))
+  return {
+    times: Float64Array.from(readings, r => r.at),
+    temps,
+    dewPoints: Float64Array.from(readings, (r, i) => dewOf(temps[i]!, r.rh)),
+    doubts: Float64Array.from(readings, r => r.doubt ?? 0),
+    shape,
+    zone: clock,
+    usual: { tempC: room.usual.tempC, dewPointC: dewOf(room.usual.tempC, room.usual.rh) },
+  }
+}
+
+/** Temperature in degrees Celsius at an instant, as the model's first section tells. */
+export function trackTemp(track: RoomTrack, at: number): number {
+  return tempOf(track.times, track.temps, at, track.shape, track.zone, track.usual.tempC)
+}
+
+/** Dew point in degrees Celsius at an instant: linear between readings, held before the first and after the last. */
+export function trackDewPoint(track: RoomTrack, at: number): number {
+  const { times, dewPoints, usual } = track
+  const last = times.length - 1
+  if (last < 0) return usual.dewPointC
+  const i = lastBefore(times, at)
+  if (i < 0) return dewPoints[0]!
+  if (i === last) return dewPoints[last]!
+  return lerp(dewPoints[i]!, dewPoints[i + 1]!, (at - times[i]!) / (times[i + 1]! - times[i]!))
+}
+
+/**
+ * A room's air at an instant (ms UTC), read or projected. RH is that of the dew point at the temperature, at most 1.
+ * `track` comes from `roomTrack`; keep it while no reading changes.
+ */
+export function airAt(track: RoomTrack, atMs: number): AirAt {
+  const tempC = trackTemp(track, atMs)
+  const dewPointC = trackDewPoint(track, atMs)
+  const i = lastBefore(track.times, atMs)
+  return {
+    tempC,
+    dewPointC,
+    rh: rhFromDewPoint(tempC, dewPointC),
+    assumed: i < 0,
+    hoursSinceReading: i < 0 ? null : (atMs - track.times[i]!) / hourMs,
+  }
+}

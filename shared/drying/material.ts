@@ -1,0 +1,84 @@
+import type { Driver } from '#shared/terms'
+import type { DryingMaterial } from '#shared/drying/types'
+import type { QuantileTable } from '#shared/drying/doubt'
+import { benchVariance, quantileTable, rungDoubt, windowDoubt } from '#shared/drying/doubt'
+import type { AirTables } from '#shared/air/tables'
+import { ratioOfVapour, tabledEvaporation, tabledSaturation } from '#shared/air/tables'
+import { rawRate } from '#shared/drying/rates'
+
+/** A rung made ready: everything that depends on no coat and no air. */
+export interface PreparedRung {
+  name: string
+  driver: Driver
+  /** Reference minutes from application, and from the rung below. */
+  typical: number
+  high: number
+  /** Driving force at the reference climate, in the driver's own units. */
+  referenceForce: number
+  /** Exponent of the coat factor. */
+  exponent: number
+  quantiles: QuantileTable
+}
+
+/** A window's end on the ladder: its reference minutes and the rung it falls in. */
+export interface PreparedEnd { minutes: number, rung: number }
+
+export interface PreparedMaterial {
+  material: DryingMaterial
+  rungs: readonly PreparedRung[]
+  windows: readonly { from: PreparedEnd | null, to: PreparedEnd | null }[]
+  windowQuantiles: QuantileTable
+  /** Humidity ratio of the reference climate, kg/kg. */
+  referenceRatio: number
+  /** Variance of the bench's log speed, shared by all rungs. */
+  tau2: number
+  /** Rung up to which cold spoils the film or joint: dry-to-handle, else out-of-clamps, else the last. */
+  handle: number
+}
+
+/** Log speed of the bench: the sheet's own spread, or a fixed one (then without spread). What a bench has learned joins here. */
+export type BenchSpeed = { kind: 'sheet' } | { kind: 'fixed', theta: number }
+
+export const sheetSpeed: BenchSpeed = { kind: 'sheet' }
+
+function handleRung(names: readonly string[]): number {
+  for (const name of ['dry-to-handle', 'out-of-clamps']) {
+    const i = names.indexOf(name)
+    if (i >= 0) return i
+  }
+  return names.length - 1
+}
+
+/**
+ * Makes a material ready for predicting: sorts its ladder by typical, tabulates its quantiles. Costs milliseconds and depends on no reading:
+ * keep it while the material and the bench's speed stay the same.
+ */
+export function prepareMaterial(material: DryingMaterial, tables: AirTables, bench: BenchSpeed = sheetSpeed): PreparedMaterial {
+  const ladder = [...material.milestones].sort((a, b) => a.typical - b.typical)
+  if (ladder.length === 0) throw new RangeError('milestones: expected at least one')
+  const { tempC, rh } = material.reference
+  const tau2 = bench.kind === 'fixed' ? 0 : benchVariance(ladder)
+  const rungs = ladder.map(rung => ({
+    name: rung.name,
+    driver: rung.driver,
+    typical: rung.typical,
+    high: rung.high,
+    referenceForce: rawRate(rung.driver, tempC, rh, tabledEvaporation(tables, tempC, rh)),
+    exponent: material.thicknessExponent ?? (rung.driver === 'reaction' ? 0 : 1),
+    quantiles: quantileTable(rungDoubt(rung, tau2)),
+  }))
+  const onLadder = (minutes: number | null): PreparedEnd | null => {
+    if (minutes === null) return null
+    const rung = rungs.findIndex(r => r.typical >= minutes)
+    return { minutes, rung: rung < 0 ? rungs.length - 1 : rung }
+  }
+  return {
+    material,
+    rungs,
+    windows: material.windows.map(([from, to]) => ({ from: onLadder(from), to: onLadder(to) })),
+    windowQuantiles: quantileTable(windowDoubt(tau2)),
+    referenceRatio: ratioOfVapour(rh * tabledSaturation(tables, tempC)),
+    tau2,
+    handle: handleRung(rungs.map(r => r.name)),
+  }
+}

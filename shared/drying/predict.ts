@@ -1,0 +1,110 @@
+import type { CoatCase, CoatPrediction, MilestonePrediction, ReasonCode, WindowPrediction } from '#shared/drying/types'
+import type { AirSpan, Climb } from '#shared/drying/ladder'
+import { climb, minutesAt } from '#shared/drying/ladder'
+import type { BenchSpeed, PreparedEnd, PreparedMaterial } from '#shared/drying/material'
+import { sheetSpeed } from '#shared/drying/material'
+import { bandZ } from '#shared/drying/doubt'
+import type { Staleness, Target } from '#shared/drying/solve'
+import { extraVariance, groundVariance, solve } from '#shared/drying/solve'
+import type { Said } from '#shared/drying/tests-said'
+import { whatWasSaid } from '#shared/drying/tests-said'
+import { firstChill, tooDampBy } from '#shared/drying/refusals'
+import { adviseCoat } from '#shared/drying/advice'
+
+/** Beyond this after the application nothing is promised. */
+export const horizonMs = 400 * 86_400_000
+
+/** From where a prediction is made: now (ms UTC), and how fast this bench is. */
+export interface PredictionView { now: number, bench?: BenchSpeed }
+
+interface Raw { likely: number, p90: number, p98: number, outside: boolean }
+
+function targetOf(material: PreparedMaterial, rung: number, extra: number): Target {
+  const { typical, quantiles } = material.rungs[rung]!
+  return { minutes: typical, rung, quantiles, extra }
+}
+
+function rawTimes(way: Climb, target: Target, theta: number, stale: Staleness, said: Said): Raw {
+  const notYetAt = said.notYetAt
+  const likely = solve(way, target, 1, theta, stale, notYetAt)
+  const p90 = solve(way, target, 2, theta, stale, notYetAt)
+  const p98 = solve(way, target, 3, theta, stale, notYetAt)
+  const { high } = way.material.rungs[target.rung]!
+  const outside = notYetAt !== null && (p90 === Infinity || minutesAt(way, p90, target.rung) * Math.exp(theta) > 3 * high)
+  return { likely, p90, p98, outside }
+}
+
+function windowTimes(way: Climb, theta: number, stale: Staleness, extra: number): WindowPrediction[] {
+  const end = (at: PreparedEnd, chance: 0 | 2): number | null => {
+    const target = { minutes: at.minutes, rung: at.rung, quantiles: way.material.windowQuantiles, extra }
+    const instant = at.minutes > 0 ? solve(way, target, chance, theta, stale, null) : way.appliedAt
+    return instant > way.appliedAt + horizonMs ? null : Math.round(instant)
+  }
+  return way.material.windows.map(({ from, to }) => ({
+    opensAt: from ? end(from, 2) : way.appliedAt,
+    shutsAt: to ? end(to, 0) : null,
+  }))
+}
+
+/**
+ * Predicts one coat or glue line: when each rung is likely, at 90 % and at 98 % reached, when its recoat windows open (90 %) and shut (10 %).
+ * `spans` is the air it stands in, room by room, from its application on; `material` comes from `prepareMaterial` with the same bench speed.
+ * Up the ladder every time is a running maximum. A null p90 carries its reason; a null likely is always `never`.
+ * A maker's or owner's "reached" sets a rung and those below to its time; a "not yet" conditions a rung and those above on T > then
+ * (see `lateShift`), never earlier than without it. Throws RangeError when the spans leave the application out.
+ */
+export function predictCoat(material: PreparedMaterial, coat: CoatCase, spans: readonly AirSpan[], view: PredictionView): CoatPrediction {
+  const bench = view.bench ?? sheetSpeed
+  const theta = bench.kind === 'fixed' ? bench.theta : 0
+  const way = climb(material, coat, spans)
+  const stale = { lastReadingAt: spans[spans.length - 1]!.clock.lastReadingAt }
+  const extra = extraVariance(material, coat, spans)
+  const firstExtra = extra + (coat.ground === 'primed' ? 0 : groundVariance)
+  const said = whatWasSaid(material.rungs.map(r => r.name), coat.tests ?? [])
+  const raws = material.rungs.map((_, i) => rawTimes(way, targetOf(material, i, i === 0 ? firstExtra : extra), theta, stale, said[i]!))
+  const chilledAt = firstChill(way, spans, raws[material.handle]!.likely, said)
+  const milestones = upTheLadder(way, spans, raws, said, chilledAt)
+  const pace = Math.exp(-theta)
+  const spread = Math.exp(bandZ * Math.sqrt(material.tau2))
+  const prediction: CoatPrediction = {
+    milestones,
+    windows: windowTimes(way, theta, stale, extra),
+    speed: { median: pace, p10: pace / spread, p90: pace * spread },
+    state: chilledAt !== null && chilledAt <= view.now ? 'doubtful' : 'sound',
+    chilledAt,
+    advice: [],
+  }
+  prediction.advice = adviseCoat(way, coat, spans, prediction, view.now)
+  return prediction
+}
+
+function upTheLadder(way: Climb, spans: readonly AirSpan[], raws: readonly Raw[], said: readonly Said[], chilledAt: number | null): MilestonePrediction[] {
+  const limit = way.appliedAt + horizonMs
+  let likely = way.appliedAt
+  let p90 = way.appliedAt
+  let p98 = way.appliedAt
+  let carried: ReasonCode | null = null
+  return raws.map((raw, i): MilestonePrediction => {
+    const { name } = way.material.rungs[i]!
+    const { reachedAt } = said[i]!
+    if (reachedAt !== null) {
+      likely = p90 = p98 = reachedAt
+      carried = null
+      return { name, likelyAt: reachedAt, p90At: reachedAt, p98At: reachedAt, reachedAt, reason: null }
+    }
+    likely = Math.max(likely, raw.likely)
+    p90 = Math.max(p90, raw.p90, likely)
+    p98 = Math.max(p98, raw.p98, p90)
+    const reason = likely > limit ? 'never' : reasonOf(way, spans, i, likely, p90, chilledAt, raw.outside) ?? carried
+    carried = reason
+    const instant = (at: number) => at > limit ? null : Math.round(at)
+    return { name, likelyAt: instant(likely), p90At: reason ? null : instant(p90), p98At: reason ? null : instant(p98), reachedAt: null, reason }
+  })
+}
+
+function reasonOf(way: Climb, spans: readonly AirSpan[], rung: number, likely: number, p90: number, chilledAt: number | null, outside: boolean): ReasonCode | null {
+  if (chilledAt !== null && chilledAt < likely) return 'below-minimum'
+  if (tooDampBy(way, spans, rung, likely)) return 'too-damp'
+  if (outside) return 'outside-sheet'
+  return p90 > way.appliedAt + horizonMs ? 'never' : null
+}
