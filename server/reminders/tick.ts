@@ -1,0 +1,19 @@
+import type { Database } from '~~/server/utils/database'
+import { claimDue } from './claim'
+import { deliverReminder } from './deliver'
+import type { Channels } from './types'
+
+/**
+ * Makes every call that is due at `now` (ms UTC), also those that fell due while the server was down. Transactions
+ * are short; nothing is sent inside one. May run twice at a time: a call is held by one runner.
+ * @returns how many calls were taken in hand
+ */
+export async function tick(db: Database, now: number, channels: Channels): Promise<number> {
+  let taken = 0
+  for (;;) {
+    const held = claimDue(db, now)
+    if (held.length === 0) return taken
+    taken += held.length
+    await Promise.all(held.map(id => deliverReminder(db, id, now, channels)))
+  }
+}
