@@ -1,5 +1,6 @@
 import { and, eq, inArray, isNull } from 'drizzle-orm'
-import { act, callChoice, cause, member, person, ragDuty, subscription } from '~~/db/schema'
+import type { cause } from '~~/db/schema'
+import { act, callChoice, member, person, ragDuty, subscription } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import type { CallKind, Channel } from '#shared/terms'
 import type { Audience } from './types'

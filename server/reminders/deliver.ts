@@ -63,15 +63,19 @@ function recordOutcome(db: Database, deliveryId: number, kind: CallKind, outcome
     if (!row) return
     const again = outcome.kind === 'unreachable' || (outcome.kind === 'unresolved' && isUrgent(kind))
     const asked = outcome.kind === 'unreachable' ? Math.min(outcome.retryAfterMs ?? 0, 60 * minute) : 0
-    const status = again ? 'queued' : outcome.kind === 'unresolved' ? 'unknown' : outcome.kind
     tx.update(delivery).set({
-      status: status === 'unreachable' ? 'queued' : status,
+      status: statusAfter(outcome, again),
       nextTryAt: again ? now + Math.max(waitAfter(row.tries, kind), asked) : null,
       changedAt: now,
       problem: outcome.kind === 'accepted' ? null : outcome.problem,
     }).where(eq(delivery.id, deliveryId)).run()
     if (outcome.kind === 'gone' && row.channel === 'push') tx.update(subscription).set({ goneAt: now }).where(eq(subscription.id, row.endpointId)).run()
   }, { behavior: 'immediate' })
+}
+
+function statusAfter(outcome: SendOutcome, again: boolean) {
+  if (again || outcome.kind === 'unreachable') return 'queued'
+  return outcome.kind === 'unresolved' ? 'unknown' : outcome.kind
 }
 
 /** A call with something still queued is held until that is due again; any other was made. */

@@ -90,6 +90,9 @@ function answerTo(tx: Transaction, why: CauseRow): { actId: number | null } | nu
   return why.subjectType === 'batch' ? workOn(tx, why) : null
 }
 
+// "Coat is on, 20 minutes ago": what is told after the call may have been done before it.
+const backdatedMs = 12 * 3_600_000
+
 /** The group key of a batch's call begins with the step's key and the turn's ordinal: has a turn of these been done? */
 function workOn(tx: Transaction, why: CauseRow): { actId: number | null } | null {
   const [stepKey, ordinal] = JSON.parse(why.groupKey) as [string, number]
@@ -98,6 +101,6 @@ function workOn(tx: Transaction, why: CauseRow): { actId: number | null } | null
     join piece_step s on s.id = t.step_id join piece p on p.id = s.piece_id
     left join ${coat} on ${coat.turnId} = t.id
     where p.batch_id = ${why.subjectId} and s.key = ${stepKey} and t.ordinal = ${ordinal} and t.status in ('done', 'doing')
-      and coalesce(t.done_at, ${why.madeAt}) >= ${why.madeAt} order by t.done_at desc limit 1`)
+      and coalesce(t.done_at, ${why.madeAt}) > ${why.madeAt - backdatedMs} order by t.done_at desc limit 1`)
   return found ?? null
 }

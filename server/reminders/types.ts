@@ -20,12 +20,12 @@ export interface WantedReminder {
 }
 
 /** What became of one attempt. `unresolved`: it may have arrived; `unreachable`: it certainly did not. */
-export type SendOutcome =
-  | { kind: 'accepted' }
-  | { kind: 'gone', problem: string }
-  | { kind: 'failed', problem: string }
-  | { kind: 'unresolved', problem: string }
-  | { kind: 'unreachable', problem: string, retryAfterMs: number | null }
+export type SendOutcome
+  = | { kind: 'accepted' }
+    | { kind: 'gone', problem: string }
+    | { kind: 'failed', problem: string }
+    | { kind: 'unresolved', problem: string }
+    | { kind: 'unreachable', problem: string, retryAfterMs: number | null }
 
 /** One sending, with all a channel needs. */
 export interface OutgoingCall {

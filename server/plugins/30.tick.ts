@@ -1,0 +1,34 @@
+import { defineNitroPlugin } from 'nitropack/runtime'
+import cron from 'node-cron'
+import { releaseHolds } from '~~/server/reminders/claim'
+import { openChannels } from '~~/server/reminders/channels'
+import { tick } from '~~/server/reminders/tick'
+import { reconcileAll } from '~~/server/reminders/wanted'
+import { useConfig } from '~~/server/utils/config'
+import { useDatabase } from '~~/server/utils/database'
+import { whenReady } from '~~/server/utils/ready'
+
+async function lookRound() {
+  const db = useDatabase()
+  const now = Date.now()
+  reconcileAll(db, now)
+  await tick(db, now, openChannels(db, useConfig(), process.env))
+}
+
+async function begin() {
+  await whenReady()
+  releaseHolds(useDatabase(), Date.now())
+  await lookRound()
+}
+
+const complain = (error: unknown) => console.error('The calls could not be looked through.', error)
+
+// Once a minute, and once at boot: what fell due while the server was down is not lost.
+export default defineNitroPlugin((nitro) => {
+  if (import.meta.prerender) return
+  const boot = begin().catch(complain)
+  const task = cron.schedule('* * * * *', () => boot.then(lookRound).catch(complain), { noOverlap: true, timezone: 'UTC' })
+  nitro.hooks.hook('close', async () => {
+    await task.destroy()
+  })
+})

@@ -1,0 +1,38 @@
+import { sendMail } from '~~/server/mail/send'
+import { pushKeys } from '~~/server/push/keys'
+import { sendPush } from '~~/server/push/send'
+import type { Config } from '~~/server/utils/config'
+import type { Database } from '~~/server/utils/database'
+import type { CallKind } from '#shared/terms'
+import { callWords } from '#shared/words/calls'
+import { isUrgent } from './claim'
+import type { Channels, OutgoingCall, SendOutcome } from './types'
+
+const minute = 60
+
+/** How long a push service may keep trying, in seconds: until the call is asked again, or says nothing any more. */
+const timeToLive: Record<CallKind, number> = { 'rags': 15 * minute, 'last moment to start': 30 * minute, 'ready': 240 * minute, 'before you leave': 120 * minute }
+
+/** The ways out of this installation, by its settings. */
+export function openChannels(db: Database, config: Config, env: Record<string, string | undefined>): Channels {
+  const push = { keys: pushKeys(db, env), subject: config.pushSubject, allowLoopback: config.allowLoopbackPush }
+  return {
+    push: async (call): Promise<SendOutcome> => {
+      if (call.to.channel !== 'push') return { kind: 'failed', problem: 'This is not a browser.' }
+      const { title, body, path, stableId } = call
+      return sendPush(call.to, { title, body, path, tag: stableId }, { topic: stableId, ttl: timeToLive[call.kind], urgency: isUrgent(call.kind) ? 'high' : 'normal' }, push)
+    },
+    mail: async call => call.to.channel === 'mail' ? sendMail(toMail(call, call.to, config), config) : { kind: 'failed', problem: 'This is not a mail address.' },
+  }
+}
+
+function toMail(call: OutgoingCall, to: { address: string, name: string }, config: Config) {
+  return {
+    stableId: call.stableId,
+    from: config.smtp?.from ?? 'Stillwet <stillwet@localhost>',
+    to: { name: to.name, address: to.address },
+    subject: callWords.mail.subject(call.title, call.studioName),
+    text: callWords.mail.text(call.body, config.publicUrl === null ? null : `${config.publicUrl}${call.path}`, call.studioName),
+    at: Date.now(),
+  }
+}

@@ -1,0 +1,51 @@
+/** Every sentence of the calls: what a notification and a mail say. Times arrive as words. */
+
+const pieces = (count: number) => count === 1 ? 'one piece' : `${count} pieces`
+
+/** At most three names, then how many more. */
+export function someOf(names: readonly string[]): string {
+  const shown = names.slice(0, 3).join(', ')
+  return names.length > 3 ? `${shown} and ${names.length - 3} more` : shown
+}
+
+interface Work { step: string, batch: string, count: number }
+
+const what = ({ step, batch, count }: Work) => `${step}: ${batch}, ${pieces(count)}.`
+
+const weekdays = ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun']
+
+export const callWords = {
+  onDay: (weekday: number, clock: string) => `${weekdays[weekday - 1] ?? ''} ${clock}`.trim(),
+  lastMoment: {
+    title: (by: string) => `Start by ${by}`,
+    all: (work: Work, by: string, few: { count: number, by: string } | null) => {
+      const rest = few ? `, by ${few.by} for the first ${few.count}` : ''
+      return work.count === 1 ? `${what(work)} Start by ${by}.` : `${what(work)} Start by ${by} to do all ${work.count}${rest}.`
+    },
+    few: (work: Work, few: { count: number, by: string }) => `${what(work)} There is no longer time for all ${work.count}. Start by ${few.by} for the first ${few.count}.`,
+  },
+  ready: {
+    title: (step: string, from: string) => `${step} from ${from}`,
+    body: (work: Work) => `${work.batch}, ${pieces(work.count)}. Still tacky? Tell us, the time moves.`,
+    afterTest: (work: Work) => `${work.batch}, ${pieces(work.count)}. Touch it first and tell us: the time rests on your test.`,
+  },
+  leaving: {
+    title: (at: string) => `Before you leave at ${at}`,
+    shuts: (step: string, batch: string, by: string) => `Shuts overnight: ${step}, ${batch}. Start by ${by}.`,
+    outdoors: (names: readonly string[]) => `Still outdoors: ${someOf(names)}. Look on the board how to hold them before you bring them in.`,
+    heater: (room: string, films: number) => `${room}: ${films === 1 ? 'a film is' : `${films} films are`} still drying. The times count on the heating tonight.`,
+    solvent: (room: string) => `${room}: a solvent film is drying. No flame, pilot light or heater in there.`,
+    lids: (names: readonly string[]) => `Lids on: ${someOf(names)}.`,
+    pot: 'Is the glue pot off?',
+    rags: (rooms: readonly string[]) => `Oily rags from ${someOf(rooms)}: say where they are.`,
+  },
+  rags: {
+    title: 'Where are the oily rags?',
+    body: (room: string, last: string) => `${room}, last oil at ${last}. Rags, pads, towels, steel wool and sanding dust can catch fire by themselves hours later. Flat outdoors in one layer, or in the water can? We ask again until somebody answers. Follow the product's safety data sheet and your local rules.`,
+    again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
+  },
+  mail: {
+    subject: (title: string, studio: string) => `${title} (${studio})`,
+    text: (body: string, link: string | null, studio: string) => [body, '', ...(link ? [link, ''] : []), `You get this mail as a member of ${studio}. Settings say which calls you get.`].join('\n'),
+  },
+} as const
