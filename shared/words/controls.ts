@@ -14,7 +14,8 @@ export const controlWords = {
   note: 'Note.',
   when: 'When',
   timeNow: 'now',
-  timeAgo: 'min ago',
+  timeAgo: 'ago',
+  timeMinutes: 'min',
   timeOther: 'other',
   timeDay: 'Day',
   timeClock: 'Time',
@@ -23,10 +24,10 @@ export const controlWords = {
 
 /** "10 min ago"; for a screen reader as for the eye. */
 export function minutesAgo(minutes: number): string {
-  return minutes === 0 ? controlWords.timeNow : `${minutes} ${controlWords.timeAgo}`
+  return minutes === 0 ? controlWords.timeNow : `${minutes} ${controlWords.timeMinutes} ${controlWords.timeAgo}`
 }
 
-/** "Less warmth, down by 0.5 °C": the name of a stepper's key. */
+/** "Warmth: less": the name of a stepper's key. */
 export function stepName(direction: 'less' | 'more', label: string): string {
   return `${label}: ${direction}`
 }
