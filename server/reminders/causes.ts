@@ -1,5 +1,6 @@
+import { clockTime, localDate, roughTime } from '#shared/time'
 import { callWords } from '#shared/words/calls'
-import { lastOpenMoment, localDate, nightAfter } from './hours'
+import { lastOpenMoment, nightAfter } from './hours'
 import { workKey } from './state'
 import type { CallState, PlannedTurn } from './state'
 import type { WantedReminder } from './types'
@@ -13,8 +14,15 @@ export const ragsAgainMs = 15 * minute
 const leaveLeadMs = 30 * minute
 const leaveUntilMs = 90 * minute
 
-/** Says an instant in words, with the weekday when it is not today. */
-export type SayTime = (at: number) => string
+/** How the calls of one studio say a time: `by` is never later than it is, `from` never earlier, `clock` to the minute. */
+function timeWords({ hours: { zone } }: CallState, now: number) {
+  const clock = { now, zone }
+  return {
+    by: (at: number) => roughTime(at, clock, 'down'),
+    from: (at: number) => roughTime(at, clock, 'up'),
+    clock: (at: number) => clockTime(at, clock),
+  }
+}
 
 /** Pieces of one batch that come to the same step in the same session: one call for all of them. */
 interface Group { key: string, first: PlannedTurn, turns: PlannedTurn[], failedTests: number }
@@ -48,17 +56,18 @@ const callFor = (group: Group) => ({
 })
 
 /** The last moment to start them all, and then the last moment for as many as could still be done. */
-export function lastMoments(state: CallState, now: number, say: SayTime): WantedReminder[] {
+export function lastMoments(state: CallState, now: number): WantedReminder[] {
+  const { by } = timeWords(state, now)
   return groupTurns(state.turns.filter(turn => turn.lastStartAt !== null && !state.underWay.has(workKey(turn)))).flatMap((group): WantedReminder[] => {
     const allAt = least(group.turns.map(turn => turn.lastStartAt))
     if (allAt === null) return []
     const fewAt = least(group.turns.map(turn => turn.lastStartFewAt))
     const count = least(group.turns.map(turn => turn.firstFew))
-    const few = fewAt !== null && count !== null && fewAt > allAt ? { count, by: say(fewAt) } : null
+    const few = fewAt !== null && count !== null && fewAt > allAt ? { count, by: by(fewAt) } : null
     const call = { ...callFor(group), kind: 'last moment to start' as const }
     const work = workOf(group)
     if (now < allAt) {
-      return [{ ...call, stage: 'all', dueAt: leadBefore(state, allAt), title: callWords.lastMoment.title(say(allAt)), body: callWords.lastMoment.all(work, say(allAt), few) }]
+      return [{ ...call, stage: 'all', dueAt: leadBefore(state, allAt), title: callWords.lastMoment.title(by(allAt)), body: callWords.lastMoment.all(work, by(allAt), few) }]
     }
     if (few && fewAt !== null && now < fewAt) {
       return [{ ...call, stage: 'first few', dueAt: Math.max(allAt, fewAt - leadMs), title: callWords.lastMoment.title(few.by), body: callWords.lastMoment.few(work, few) }]
@@ -73,40 +82,42 @@ function leadBefore(state: CallState, at: number) {
 }
 
 /** The next attended turn over a film, when the plan has hands for it. */
-export function readies(state: CallState, say: SayTime): WantedReminder[] {
+export function readies(state: CallState, now: number): WantedReminder[] {
+  const { from } = timeWords(state, now)
   return groupTurns(state.turns.filter(turn => turn.after !== null && !state.underWay.has(workKey(turn)))).map((group) => {
     const dueAt = Math.min(...group.turns.map(turn => turn.dueAt))
     const work = workOf(group)
     const body = group.turns.some(turn => turn.afterTest) ? callWords.ready.afterTest(work) : callWords.ready.body(work)
-    return { ...callFor(group), kind: 'ready' as const, stage: 'ready', dueAt, title: callWords.ready.title(work.step, say(dueAt)), body }
+    return { ...callFor(group), kind: 'ready' as const, stage: 'ready', dueAt, title: callWords.ready.title(work.step, from(dueAt)), body }
   })
 }
 
 /** What to see to before the studio shuts tonight, in one call; none when there is nothing. */
-export function leaving(state: CallState, now: number, say: SayTime): WantedReminder[] {
+export function leaving(state: CallState, now: number): WantedReminder[] {
   const night = nightAfter(state.hours, now)
   if (!night || now > night.fromAt + leaveUntilMs) return []
-  const lines = leavingLines(state, night, say)
+  const lines = leavingLines(state, night, now)
   if (lines.length === 0) return []
   return [{
     kind: 'before you leave', subjectType: 'studio', subjectId: state.studioId, groupKey: localDate(now, state.hours.zone), stage: 'evening', repeat: 0,
-    dueAt: night.fromAt - leaveLeadMs, title: callWords.leaving.title(say(night.fromAt)), body: lines.join('\n'), path: '/hands?list=leaving',
+    dueAt: night.fromAt - leaveLeadMs, title: callWords.leaving.title(timeWords(state, now).clock(night.fromAt)), body: lines.join('\n'), path: '/hands?list=leaving',
   }]
 }
 
-function leavingLines(state: CallState, night: { fromAt: number, toAt: number | null }, say: SayTime): string[] {
+function leavingLines(state: CallState, night: { fromAt: number, toAt: number | null }, now: number): string[] {
   const words = callWords.leaving
+  const { by } = timeWords(state, now)
   const shutting = groupTurns(state.turns.filter(turn => turn.lastStartAt !== null && turn.lastStartAt >= night.fromAt && turn.lastStartAt < (night.toAt ?? Infinity)))
-  const pots = state.usedToday.filter(used => /hide|rabbit/.test(used.libraryKey ?? '') || used.kind === 'glue size')
+  const isPotUsed = state.usedToday.some(used => used.kind === 'glue size' || used.libraryKey === 'hot-hide-glue')
   return [
     ...state.rags.length ? [words.rags(state.rags.map(duty => duty.roomName))] : [],
-    ...shutting.map(({ first, turns }) => words.shuts(first.turnName || first.stepName, first.batchName, say(least(turns.map(turn => turn.lastStartAt)) ?? night.fromAt))),
+    ...shutting.map(({ first, turns }) => words.shuts(first.turnName || first.stepName, first.batchName, by(least(turns.map(turn => turn.lastStartAt)) ?? night.fromAt))),
     ...state.outdoors.length ? [words.outdoors(state.outdoors.map(piece => piece.pieceName))] : [],
     ...state.wetRooms.filter(room => room.solvent > 0).map(room => words.solvent(room.name)),
     // Never beside a solvent film: warmth there is no lever.
     ...state.wetRooms.filter(room => room.solvent === 0 && room.heated).map(room => words.heater(room.name, room.films)),
     ...state.usedToday.length ? [words.lids(state.usedToday.map(used => used.name))] : [],
-    ...pots.length ? [words.pot] : [],
+    ...isPotUsed ? [words.pot] : [],
   ]
 }
 
@@ -114,10 +125,11 @@ function leavingLines(state: CallState, night: { fromAt: number, toAt: number | 
  * Oily rags: half an hour after the last drying-oil step, before the studio shuts, and every quarter of an hour until
  * somebody answers. After a time without the server only the newest question is asked, not each that was missed.
  */
-export function ragCalls(state: CallState, now: number, say: SayTime): WantedReminder[] {
+export function ragCalls(state: CallState, now: number): WantedReminder[] {
+  const { clock } = timeWords(state, now)
   return state.rags.flatMap((duty): WantedReminder[] => {
     const call = { kind: 'rags' as const, subjectType: 'rag duty' as const, subjectId: duty.dutyId, groupKey: `oil ${duty.lastOilActId}`, path: `/hands?rags=${duty.dutyId}`, title: callWords.rags.title }
-    const words = (repeat: number) => (repeat === 0 ? callWords.rags.body : callWords.rags.again)(duty.roomName, say(duty.lastOilAt))
+    const words = (repeat: number) => (repeat === 0 ? callWords.rags.body : callWords.rags.again)(duty.roomName, clock(duty.lastOilAt))
     const firstAt = duty.lastOilAt + ragsFirstMs
     const asked = Math.max(0, Math.floor((now - firstAt) / ragsAgainMs))
     const repeats = now < firstAt ? [0] : [asked, asked + 1]

@@ -1,9 +1,9 @@
-import { wallClock } from '#shared/time'
-import type { Wall, WallClock } from '#shared/time'
+import { addDays, fromLocal, localDate, weekdayOf } from '#shared/time'
+import type { StudioZone } from '#shared/time'
 
 /** Hours of one weekday (1 Monday .. 7 Sunday) in minutes since local midnight, and days without work as local dates, both ends included. */
 export interface StudioHours {
-  zone: string
+  zone: StudioZone
   open: readonly { weekday: number, fromMin: number, toMin: number }[]
   closed: readonly { fromDate: string, toDate: string }[]
 }
@@ -11,36 +11,15 @@ export interface StudioHours {
 /** An interval of time in ms UTC, half open. */
 export interface Span { fromAt: number, toAt: number }
 
-const noon = 720
-const dateOf = ({ year, month, day }: Wall) => `${year}-${String(month).padStart(2, '0')}-${String(day).padStart(2, '0')}`
-
-/** The local day `offset` days after the one of `at`, read at noon, where no zone changes its clock. */
-function dayNear(clock: WallClock, at: number, offset: number): Wall {
-  const wall = clock.wallAt(at)
-  return clock.wallAt(clock.instantAt({ ...wall, day: wall.day + offset, minute: noon }))
-}
-
-/** The local date of an instant, as 2026-03-29. */
-export function localDate(at: number, zone: string): string {
-  return dateOf(wallClock(zone).wallAt(at))
-}
-
-/** When the local day of an instant began. */
-export function dayStart(at: number, zone: string): number {
-  const clock = wallClock(zone)
-  return clock.instantAt({ ...clock.wallAt(at), minute: 0 })
-}
-
 /** When the studio is open, from the day before `at` for ten days, in order. Wall time, so that a clock change moves the instant. */
 export function openSpans(hours: StudioHours, at: number): Span[] {
-  const clock = wallClock(hours.zone)
+  const { zone } = hours
   const spans: Span[] = []
   for (let offset = -1; offset < 10; offset += 1) {
-    const wall = dayNear(clock, at, offset)
-    const date = dateOf(wall)
+    const date = addDays(localDate(at, zone), offset)
     if (hours.closed.some(closure => closure.fromDate <= date && date <= closure.toDate)) continue
-    const today = hours.open.filter(span => span.weekday === wall.weekday).sort((a, b) => a.fromMin - b.fromMin)
-    spans.push(...today.map(span => ({ fromAt: clock.instantAt({ ...wall, minute: span.fromMin }), toAt: clock.instantAt({ ...wall, minute: span.toMin }) })))
+    const today = hours.open.filter(span => span.weekday === weekdayOf(date)).sort((a, b) => a.fromMin - b.fromMin)
+    spans.push(...today.map(span => ({ fromAt: fromLocal(date, span.fromMin, zone), toAt: fromLocal(date, span.toMin, zone) })))
   }
   return spans
 }

@@ -2,7 +2,8 @@ import { and, eq, isNull, sql } from 'drizzle-orm'
 import { closure, openHours, ragDuty, room, studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
 import type { TurnKind } from '#shared/terms'
-import { dayStart } from './hours'
+import { startOfLocalDay, studioZone } from '#shared/time'
+import type { StudioZone } from '#shared/time'
 import type { StudioHours } from './hours'
 
 /** A turn of the current plan that waits to be done, as far as calls need it. Times in ms UTC. */
@@ -56,20 +57,21 @@ export const workKey = (turn: { batchId: number, stepKey: string, ordinal: numbe
 export function readCallState(db: Database, studioId: number, now: number): CallState | null {
   const found = db.select().from(studio).where(eq(studio.id, studioId)).get()
   if (!found) return null
+  const zone = studioZone(found.zone)
   return {
     studioId,
-    hours: readHours(db, studioId, found.zone),
+    hours: readHours(db, studioId, zone),
     turns: readTurns(db, studioId, now),
     underWay: readUnderWay(db, studioId, now),
     wetRooms: readWetRooms(db, studioId),
     outdoors: readOutdoors(db, studioId),
-    usedToday: readUsed(db, studioId, dayStart(now, found.zone)),
+    usedToday: readUsed(db, studioId, startOfLocalDay(now, zone)),
     rags: db.select({ dutyId: ragDuty.id, roomName: room.name, lastOilAt: ragDuty.lastOilAt, lastOilActId: ragDuty.lastOilActId })
       .from(ragDuty).innerJoin(room, eq(ragDuty.roomId, room.id)).where(and(eq(ragDuty.studioId, studioId), isNull(ragDuty.answeredAt))).all(),
   }
 }
 
-function readHours(db: Database, studioId: number, zone: string): StudioHours {
+function readHours(db: Database, studioId: number, zone: StudioZone): StudioHours {
   const own = (table: typeof openHours | typeof closure) => and(eq(table.studioId, studioId), isNull(table.memberId))
   return { zone, open: db.select().from(openHours).where(own(openHours)).all(), closed: db.select().from(closure).where(own(closure)).all() }
 }

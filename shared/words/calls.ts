@@ -12,10 +12,7 @@ interface Work { step: string, batch: string, count: number }
 
 const what = ({ step, batch, count }: Work) => `${step}: ${batch}, ${pieces(count)}.`
 
-const weekdays = ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun']
-
 export const callWords = {
-  onDay: (weekday: number, clock: string) => `${weekdays[weekday - 1] ?? ''} ${clock}`.trim(),
   lastMoment: {
     title: (by: string) => `Start by ${by}`,
     all: (work: Work, by: string, few: { count: number, by: string } | null) => {

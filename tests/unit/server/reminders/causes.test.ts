@@ -18,7 +18,8 @@ describe('the last moment to start', () => {
 
   it('is one call for twelve covers, half an hour before, counted back', () => {
     const { test } = withPlan()
-    const [call, ...more] = wanted(test, noon, 'last moment to start')
+    // The words are those of the moment it is made: 13:20.
+    const [call, ...more] = wanted(test, noon + minutes(80), 'last moment to start')
     expect(more).toEqual([])
     expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Second coat: Ledgers, 12 pieces. Start by 13:50 to do all 12, by 14:35 for the first 4.' })
   })
@@ -50,7 +51,7 @@ describe('the last moment to start', () => {
     const { test, turns } = withPlan()
     // 03:00 next morning; the studio shuts at 18:00, so 17:30.
     planTurns(test, turns, { startsAt: noon + minutes(60), lastStartAt: noon + minutes(15 * 60) })
-    expect(wanted(test, noon, 'last moment to start')[0]).toMatchObject({ dueAt: noon + minutes(330), title: 'Start by Wed 03:00' })
+    expect(wanted(test, noon, 'last moment to start')[0]).toMatchObject({ dueAt: noon + minutes(330), title: 'Start by Wed 3:00' })
   })
 })
 
@@ -86,7 +87,7 @@ describe('before you leave', () => {
     expect(call).toMatchObject({ dueAt: noon + minutes(330), groupKey: '2026-06-02', title: 'Before you leave at 18:00' })
     expect(call?.body.split('\n')).toEqual([
       'Oily rags from Bench room: say where they are.',
-      'Shuts overnight: Second coat, Ledgers. Start by Wed 03:00.',
+      'Shuts overnight: Second coat, Ledgers. Start by Wed 3:00.',
       'Bench room: a film is still drying. The times count on the heating tonight.',
       'Lids on: Wood varnish.',
     ])
