@@ -143,7 +143,6 @@ function forcesOf(driver: Driver, samples: AirSamples, air: AirTables, material:
   }
 }
 
-
 function throughDays(day: Float64Array, local: number): number {
   const days = Math.floor(local / dayMs)
   const place = (local - days * dayMs) / quarterMs

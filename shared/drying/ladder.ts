@@ -120,7 +120,8 @@ export function instantOf(way: Climb, minutes: number, rung: number): number {
   while (i < rung && rungs[i]!.typical < minutes) i++
   const below = i > 0 ? rungs[i - 1]!.typical : 0
   if (way.began[i] === Infinity) return Infinity
-  return arrival(way.stretches[i]!, way.began[i]! + (minutes - below) * way.slowness[i]!)
+  const at = arrival(way.stretches[i]!, way.began[i]! + (minutes - below) * way.slowness[i]!)
+  return i > 0 ? Math.max(at, way.reach[i - 1]!) : at
 }
 
 /** Reference minutes the clock that stays on `rung` for ever shows at an instant: 0 at the application. */

@@ -74,7 +74,7 @@ export function predictCoat(material: PreparedMaterial, coat: CoatCase, spans: r
     chilledAt,
     advice: [],
   }
-  prediction.advice = adviseCoat(way, coat, spans, prediction, view.now)
+  prediction.advice = adviseCoat({ way, coat, spans, prediction, now: view.now })
   return prediction
 }
 

@@ -7,7 +7,7 @@ const halfHourMs = 30 * 60_000
 export const dampCeiling = 0.92
 
 /** The earliest of a question asked of each span's clock, within that span; Infinity when none answers. */
-function inSpans(spans: readonly AirSpan[], from: number, to: number, length: number, ask: (span: AirSpan, from: number) => number): number {
+export function inSpans(spans: readonly AirSpan[], from: number, to: number, length: number, ask: (span: AirSpan, from: number) => number): number {
   for (const span of spans) {
     const start = Math.max(from, span.fromAt)
     const end = Math.min(to, span.toAt ?? Infinity)

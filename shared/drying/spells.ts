@@ -71,3 +71,12 @@ export function firstDampHalfHour(clock: RoomClock, ceiling: number, from: numbe
   const spells = spellsOf(clock, `damp ${ceiling}`, (_, rh) => rh - ceiling + 1e-6)
   return firstSpell(clock, spells, from, 30 * 60_000)
 }
+
+/** Degrees a surface must stay above the dew point for a coat to go on, or to stay on while wet (ISO 8502-4 practice). */
+export const dewMarginC = 3
+
+/** First instant from `from` on at which the air is less than 3 degrees above its dew point; Infinity when none comes. */
+export function firstThinDewMargin(clock: RoomClock, from: number): number {
+  const spells = spellsOf(clock, 'dew', (tempC, rh) => rh * tabledSaturation(clock.air, tempC) - tabledSaturation(clock.air, tempC - dewMarginC))
+  return firstSpell(clock, spells, from, 0)
+}

@@ -35,6 +35,8 @@ export interface DryingMaterial {
   thicknessExponent?: number
   /** Set when the figures stand for a mix: wider by 0.2 in log sd. */
   mixed?: boolean
+  /** Alcohol and lacquer solvents chill the film they leave: haze in air near its dew point. */
+  blushes?: boolean
 }
 
 /** A touch test: a bound, not a time. */

@@ -141,6 +141,7 @@ export function dryingMaterial(material: LibraryMaterial): DryingMaterial {
     dryAirFloor: material.dryAirFloor,
     milestones: material.milestones.map(({ name, driver, low, typical, high }) => ({ name, driver, low, typical, high })),
     windows: material.windows.map(({ from, to }) => [from, to] as const),
-    thicknessExponent: libraryFigure(material, 'thickness exponent')?.typical ?? 1,
+    thicknessExponent: libraryFigure(material, 'thickness exponent')?.typical,
+    blushes: material.solvent === 'alcohol' || material.solvent === 'lacquer thinner',
   }
 }
