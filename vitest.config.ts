@@ -2,14 +2,17 @@ import { fileURLToPath } from 'node:url'
 import { defineConfig } from 'vitest/config'
 
 const root = (path: string) => fileURLToPath(new URL(path, import.meta.url))
-const alias = { '#shared': root('./shared'), '~~': root('.'), '~': root('.'), '@': root('.') }
+const resolve = { alias: { '#shared': root('./shared'), '~~': root('.'), '~': root('.'), '@': root('.') } }
+const pure = (name: string) => ({ resolve, test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const } })
+const served = (name: string) => ({
+  resolve,
+  test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, globalSetup: ['tests/helpers/build.ts'], fileParallelism: false, testTimeout: 60_000, hookTimeout: 120_000 },
+})
 
 /** Pure tests run at once; those with a server or a browser share one build and run file by file. */
 export default defineConfig({
   test: {
-    projects: [
-      { resolve: { alias }, test: { name: 'unit', include: ['tests/unit/**/*.test.ts'], environment: 'node' } },
-      { resolve: { alias }, test: { name: 'outside', include: ['tests/outside/**/*.test.ts'], environment: 'node' } },
-    ],
+    reporters: ['default', './tests/helpers/tally-reporter.ts'],
+    projects: [pure('unit'), pure('outside'), served('api'), served('browser')],
   },
 })

@@ -39,11 +39,6 @@ export function revokeSession(db: Database, sessionHash: string, now: number): v
   db.update(session).set({ revokedAt: now }).where(and(eq(session.idHash, sessionHash), isNull(session.revokedAt))).run()
 }
 
-/** Signs a person out everywhere, after a role was taken away or a password changed. */
-export function revokeSessionsOf(db: Database | Transaction, personId: number, now: number): void {
-  db.update(session).set({ revokedAt: now }).where(and(eq(session.personId, personId), isNull(session.revokedAt))).run()
-}
-
 function findMembership(db: Database, personId: number, studioId: number): Membership | null {
   const row = db.select({ id: member.id, role: member.role }).from(member)
     .where(scoped(member, studioId, eq(member.personId, personId), isNull(member.leftAt))).get()
@@ -88,4 +83,13 @@ export function switchStudio(db: Database, sessionHash: string, personId: number
   if (!findMembership(db, personId, studioId)) return false
   db.update(session).set({ studioId }).where(eq(session.idHash, sessionHash)).run()
   return true
+}
+
+/** Whether a live page's session or wall link, whichever opened it, still lets it see this studio. */
+export function stillAdmitted(db: Database, sessionHash: string | null, wallToken: string | null, studioId: number): boolean {
+  if (wallToken !== null) return readWallLink(db, wallToken)?.id === studioId
+  const row = sessionHash === null
+    ? undefined
+    : db.select({ personId: session.personId, studioId: session.studioId }).from(session).where(and(eq(session.idHash, sessionHash), isNull(session.revokedAt))).get()
+  return row?.studioId === studioId && findMembership(db, row.personId, studioId) !== null
 }

@@ -4,6 +4,8 @@ import { join } from 'node:path'
 export interface Config {
   /** STILLWET_PRODUCTION=1: no demo studio, no demo sign-ins, and secrets must be given. */
   production: boolean
+  /** STILLWET_DEMO=0: an empty database stays empty; otherwise it gets the demo studio. Never in production. */
+  demo: boolean
   /** STILLWET_DATA: folder that holds everything the installation writes. */
   dataFolder: string
   /** STILLWET_DATABASE: the SQLite file. */
@@ -95,6 +97,7 @@ export function readConfig(env: Environment): Config {
   if (production && allowLoopbackPush) throw new ConfigError('STILLWET_ALLOW_LOOPBACK_PUSH is for tests and must be off in production.')
   return {
     production,
+    demo: !production && given(env, 'STILLWET_DEMO') !== '0',
     dataFolder,
     databaseFile: given(env, 'STILLWET_DATABASE') ?? join(dataFolder, 'stillwet.db'),
     backupFolder: given(env, 'STILLWET_BACKUPS') ?? join(dataFolder, 'backups'),

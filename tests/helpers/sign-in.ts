@@ -1,0 +1,60 @@
+/** What came back, with its body already read. `body` is whatever JSON the route sent; tests look into it freely. */
+export interface Answer<T = unknown> { status: number, body: T, headers: Headers }
+
+/** Somebody with a cookie of their own, as a browser would keep it. */
+export interface Visitor {
+  get: <T = unknown>(path: string) => Promise<Answer<T>>
+  post: <T = unknown>(path: string, body?: unknown, headers?: Record<string, string>) => Promise<Answer<T>>
+  put: <T = unknown>(path: string, body?: unknown) => Promise<Answer<T>>
+  patch: <T = unknown>(path: string, body?: unknown) => Promise<Answer<T>>
+  delete: <T = unknown>(path: string) => Promise<Answer<T>>
+  send: <T = unknown>(method: string, path: string, body?: unknown, headers?: Record<string, string>) => Promise<Answer<T>>
+  /** `name=value`, or '' before the first sign-in. */
+  cookie: () => string
+}
+
+/** A visitor nobody knows yet. */
+export function visitor(origin: string): Visitor {
+  let cookie = ''
+  async function send<T>(method: string, path: string, body?: unknown, headers: Record<string, string> = {}): Promise<Answer<T>> {
+    const sent = body === undefined ? {} : { 'content-type': 'application/json' }
+    const response = await fetch(origin + path, { method, redirect: 'manual', headers: { accept: 'application/json', ...sent, ...(cookie ? { cookie } : {}), ...headers }, body: body === undefined ? undefined : JSON.stringify(body) })
+    const given = response.headers.getSetCookie().find(line => line.startsWith('stillwet='))?.split(';')[0]
+    if (given !== undefined) cookie = given
+    const text = await response.text()
+    const isJson = response.headers.get('content-type')?.includes('json')
+    return { status: response.status, body: (isJson && text ? JSON.parse(text) : text) as T, headers: response.headers }
+  }
+  return {
+    send, cookie: () => cookie,
+    get: path => send('GET', path), post: (path, body = {}, headers) => send('POST', path, body, headers),
+    put: (path, body) => send('PUT', path, body), patch: (path, body) => send('PATCH', path, body), delete: path => send('DELETE', path),
+  }
+}
+
+export const testPassword = 'a long enough password'
+
+/** Signs in; throws when that is refused. */
+export async function signIn(origin: string, email: string, password = testPassword): Promise<Visitor> {
+  const who = visitor(origin)
+  const { status } = await who.post('/api/auth/sign-in', { email, password })
+  if (status !== 200) throw new Error(`Signing in as ${email} was answered with ${status}.`)
+  return who
+}
+
+/** Makes the first studio of an empty server and returns its owner, signed in. */
+export async function firstStudio(origin: string, name = 'Fir Lane'): Promise<Visitor> {
+  const owner = visitor(origin)
+  const { status } = await owner.post('/api/studios', { name, zone: 'Europe/London', person: { name: 'Wren', email: 'wren@example.test', password: testPassword } })
+  if (status !== 200) throw new Error(`Making the first studio was answered with ${status}.`)
+  return owner
+}
+
+/** Lets somebody new join the owner's studio and returns them, signed in. */
+export async function joinAs(origin: string, owner: Visitor, role: 'owner' | 'maker' | 'helper', email: string): Promise<Visitor> {
+  const invited = await owner.post<{ path: string }>('/api/invitations', { role })
+  const who = visitor(origin)
+  const { status } = await who.post(`/api${invited.body.path}`, { person: { name: email.split('@')[0], email, password: testPassword } })
+  if (status !== 200) throw new Error(`Joining as ${role} was answered with ${status}.`)
+  return who
+}
