@@ -1,0 +1,156 @@
+import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
+import { act, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
+import type { Membership } from '~~/server/services/sessions'
+import { change } from '~~/server/services/changes'
+import { pieceStates } from '~~/server/services/piece-states'
+import { mayHandle } from '~~/server/services/handling'
+import type { Database, Transaction } from '~~/server/utils/database'
+import { absent, conflict, impossible, isRefusal, malformed, notAllowed } from '~~/server/utils/errors'
+import type { Refusal } from '~~/server/utils/errors'
+import { owned, scoped } from '~~/server/utils/scoped'
+import { afterAct } from '~~/server/work/consequences'
+import { insertAct, spreadAlong } from '~~/server/work/record'
+import type { Acting } from '~~/server/work/record'
+import { refold } from '~~/server/work/refold'
+import { may, mayDoStep } from '#shared/permissions'
+import { actBodies } from '#shared/schemas/act'
+import type { ActRequest, TellableKind } from '#shared/schemas/act'
+import { describeIssues } from '#shared/schemas/describe'
+import type { StepKind } from '#shared/terms'
+import { actRefusals } from '#shared/words/acts'
+import type { ProblemCode } from '#shared/work/types'
+
+const minute = 60_000
+export const correctionReach = 14 * 24 * 60 * minute
+/** A phone's clock may run ahead of ours by a little. */
+const clockSlack = 2 * minute
+
+/** Who tells: a member, or the bench tablet with what a bench may say. */
+export type Teller = { member: Membership } | { bench: true }
+
+export interface Recorded { ok: true, actId: number, repeated: boolean }
+
+type PieceRow = typeof piece.$inferSelect
+
+/**
+ * Records one act on one or more pieces: guarded, one transaction, everything after it recomputed.
+ * Telling the same key twice is answered as the first time. Another version of a piece than the one the
+ * teller saw is a conflict, with the state as it is now.
+ */
+export function recordAct(db: Database, studioId: number, teller: Teller, request: ActRequest, now: number): Recorded | Refusal {
+  const before = db.select({ id: act.id }).from(act).where(scoped(act, studioId, eq(act.clientKey, request.clientKey))).get()
+  if (before) return { ok: true, actId: before.id, repeated: true }
+  const body = parseActBody(request.kind, request.body)
+  if (isRefusal(body)) return body
+  return change<Recorded | Refusal>(db, studioId, (tx) => {
+    const pieces = findPieces(tx, studioId, request.pieces.map(each => each.id))
+    const refusal = pieces.length < request.pieces.length ? absent(actRefusals.noPiece) : findRefusal(tx, studioId, teller, request, body, pieces, now)
+    if (refusal) return refusal
+    const subjects = subjectsFor(tx, studioId, request, body, pieces)
+    if (isRefusal(subjects)) return subjects
+    const actId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: request.kind, doneAt: Date.parse(request.doneAt), toldAt: now, acting: actingOf(teller), body, subjects })
+    const folded = refold(tx, studioId, pieces.map(each => each.id))
+    const problem = folded.flatMap(each => each.folded.problems).find(each => each.actId === actId)
+    if (problem) return impossible(problemSentence(problem.why))
+    afterAct(tx, studioId, { actId, kind: request.kind, body, pieceIds: pieces.map(each => each.id), memberId: actingOf(teller).memberId, now })
+    return { ok: true, actId, repeated: false }
+  })
+}
+
+/** Checks an act's body against its kind; the refusal names the field. */
+export function parseActBody(kind: TellableKind, body: unknown): Record<string, unknown> | Refusal {
+  const result = actBodies[kind].safeParse(body)
+  return result.success ? { ...result.data } : malformed(describeIssues(result.error.issues))
+}
+
+export const actingOf = (teller: Teller): Acting => ('member' in teller ? { actor: 'member', memberId: teller.member.id } : { actor: 'bench', memberId: null })
+
+export function problemSentence(why: ProblemCode): string {
+  const sentences: Record<ProblemCode, string> = {
+    'no such step': actRefusals.noStep, 'nothing left to do': actRefusals.nothingLeft, 'no film to test': actRefusals.noFilm,
+    'nothing held': actRefusals.nothingHeld, 'before its start': actRefusals.beforeStart,
+  }
+  return sentences[why]
+}
+
+function findPieces(tx: Transaction, studioId: number, ids: readonly number[]): PieceRow[] {
+  const rows = tx.select().from(piece).where(scoped(piece, studioId, inArray(piece.id, [...ids]))).all()
+  // In the order the teller named them: the row is spread along as it was worked.
+  return ids.flatMap(id => rows.find(row => row.id === id) ?? [])
+}
+
+function findRefusal(tx: Transaction, studioId: number, teller: Teller, request: ActRequest, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
+  const gone = pieces.find(each => each.goneAt !== null)
+  if (gone) return impossible(actRefusals.gonePiece(gone.name))
+  if (request.pieces.some(each => pieces.find(row => row.id === each.id)?.version !== each.version)) return conflict(actRefusals.somebodyElse, pieceStates(tx, studioId, pieces.map(each => each.id), now))
+  return checkTime(Date.parse(request.doneAt), now)
+    ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
+    ?? checkReferences(tx, studioId, body)
+    ?? (request.kind === 'air' && body.kind === 'warm air' ? checkWarmAir(tx, studioId, pieces) : null)
+}
+
+export function checkTime(doneAt: number, now: number): Refusal | null {
+  if (doneAt > now + clockSlack) return malformed({ doneAt: actRefusals.future })
+  if (doneAt < now - correctionReach) return malformed({ doneAt: actRefusals.tooOld })
+  return null
+}
+
+const benchKinds: readonly TellableKind[] = ['coat on', 'touch test', 'moved', 'it is out', 'seen']
+const workKinds: readonly TellableKind[] = ['began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'enough']
+const makerKinds: readonly TellableKind[] = ['stripped', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'gone', 'intake answered', 'air']
+
+function checkTeller(tx: Transaction, studioId: number, teller: Teller, kind: TellableKind, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
+  if (!('member' in teller)) return benchKinds.includes(kind) ? null : notAllowed()
+  const { role, stepKinds } = teller.member
+  if (kind === 'touch test') return may(role, 'record touch tests') ? null : notAllowed()
+  if (makerKinds.includes(kind)) return may(role, 'start batches') ? null : notAllowed()
+  if (kind === 'moved' && role === 'helper') {
+    const held = pieces.find(each => !mayHandle(tx, studioId, each.id, now))
+    return held ? notAllowed(actRefusals.mayNotMove(held.name)) : null
+  }
+  if (!workKinds.includes(kind)) return may(role, 'move pieces') ? null : notAllowed()
+  const wanted = kindOfStep(tx, studioId, kind, body, pieces)
+  return mayDoStep(role, stepKinds, wanted) ? null : notAllowed(actRefusals.notYourStep(wanted))
+}
+
+function kindOfStep(tx: Transaction, studioId: number, kind: TellableKind, body: Record<string, unknown>, pieces: PieceRow[]): StepKind {
+  const named = typeof body.step === 'string'
+    ? tx.select({ kind: pieceStep.kind }).from(pieceStep).where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, pieces.map(each => each.id)), eq(pieceStep.key, body.step))).get()
+    : undefined
+  return named?.kind ?? (kind === 'glue-up on' || kind === 'it is out' ? 'glue-up' : 'coat')
+}
+
+function checkReferences(tx: Transaction, studioId: number, body: Record<string, unknown>): Refusal | null {
+  const { placeId, materialVersionId } = body
+  if (typeof placeId === 'number' && !tx.select({ id: place.id }).from(place).where(owned(place, studioId, placeId)).get()) return malformed({ placeId: actRefusals.noPlace })
+  if (typeof materialVersionId === 'number' && !tx.select({ id: materialVersion.id }).from(materialVersion).where(owned(materialVersion, studioId, materialVersionId)).get()) return malformed({ materialVersionId: actRefusals.noMaterial })
+  return null
+}
+
+function checkWarmAir(tx: Transaction, studioId: number, pieces: PieceRow[]): Refusal | null {
+  const states = pieceStates(tx, studioId, pieces.map(each => each.id), 0)
+  return states.some(state => state.groups.some(group => group.films.some(film => film.solventBorne))) ? impossible(actRefusals.warmAirOnSolvent) : null
+}
+
+/** The parts an act is about with the instant of each: those named, those of the step, or all that are not joined to another. */
+function subjectsFor(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>, pieces: PieceRow[]): { partId: number, doneAt: number }[] | Refusal {
+  const ids = pieces.map(each => each.id)
+  const parts = tx.select({ id: part.id, pieceId: part.pieceId, into: part.intoPartId }).from(part).where(scoped(part, studioId, inArray(part.pieceId, ids))).orderBy(asc(part.id)).all()
+  if (request.partIds?.some(id => !parts.some(each => each.id === id))) return malformed({ partIds: actRefusals.notInPiece })
+  const step = typeof body.step === 'string' ? stepsNamed(tx, studioId, ids, body.step) : []
+  const minutes = workKinds.includes(request.kind) ? (typeof body.minutes === 'number' ? body.minutes : step[0]?.pieceMin ?? 0) : 0
+  const times = spreadAlong(pieces.length, Date.parse(request.doneAt), minutes)
+  return pieces.flatMap((each, index) => {
+    const own = parts.filter(one => one.pieceId === each.id)
+    const ofStep = new Set(step.filter(one => one.pieceId === each.id).map(one => one.partId))
+    const chosen = request.partIds ? own.filter(one => request.partIds?.includes(one.id)) : ofStep.size > 0 ? own.filter(one => ofStep.has(one.id)) : own.filter(one => one.into === null)
+    return chosen.map(one => ({ partId: one.id, doneAt: times[index] ?? Date.parse(request.doneAt) }))
+  })
+}
+
+function stepsNamed(tx: Transaction, studioId: number, pieceIds: readonly number[], key: string) {
+  return tx.select({ pieceId: pieceStep.pieceId, pieceMin: pieceStep.pieceMin, partId: stepTarget.partId }).from(pieceStep)
+    .leftJoin(stepTarget, and(eq(stepTarget.stepId, pieceStep.id), eq(stepTarget.studioId, studioId)))
+    .where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, [...pieceIds]), eq(pieceStep.key, key))).all()
+}
+

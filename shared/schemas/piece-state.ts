@@ -1,0 +1,131 @@
+import type { MilestonePrediction, WindowPrediction } from '#shared/drying/types'
+import type { DoubtCause, Hold, MilestoneName, Risk, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
+
+// One shape for every screen, feed and message. Instants are ms UTC here; `toWire` makes them ISO 8601 on the way out.
+
+/** A film or glue line that can still change an answer. */
+export interface FilmState {
+  coatId: number
+  actId: number
+  kind: 'coat' | 'glue-up' | 'size'
+  step: string | null
+  material: string | null
+  materialVersionId: number | null
+  solventBorne: boolean
+  mustLieLevel: boolean
+  glovesUntil: MilestoneName | null
+  partIds: number[]
+  /** Face keys; empty for a glue line or a part without faces. */
+  faces: string[]
+  layer: number
+  beganAt: number
+  endedAt: number
+  hold: Hold | null
+  milestones: MilestonePrediction[]
+  windows: WindowPrediction[]
+  doubts: { cause: DoubtCause, fromAt: number }[]
+}
+
+export interface PartState {
+  partId: number
+  key: string
+  name: string
+  grip: string | null
+  missingAt: number | null
+  seenAt: number | null
+}
+
+/** Parts that move together, and so stand, are judged and are drawn as one. */
+export interface GroupState {
+  parts: PartState[]
+  placeId: number | null
+  roomId: number | null
+  carrier: string | null
+  films: FilmState[]
+}
+
+/** What a turn waits for: a step to be done, or a film to have come to a rung at a risk, inside a window if any. */
+export interface WaitState {
+  what: string
+  done: boolean
+  milestone: MilestoneName | null
+  risk: Risk
+  film: MilestonePrediction | null
+  /** Windows of that film; empty when none bind. */
+  windows: WindowPrediction[]
+}
+
+export interface PlannedState {
+  startsAt: number
+  endsAt: number
+  dueAt: number
+  memberId: number | null
+  sessionId: number | null
+  lastStartAt: number | null
+  firstFew: number | null
+  lastStartFewAt: number | null
+  afterTest: boolean
+}
+
+/** A turn that is being done or could be next. */
+export interface TurnState {
+  turnId: number
+  kind: TurnKind
+  name: string
+  no: number
+  of: number
+  status: TurnStatus
+  step: { id: number, key: string, name: string, kind: StepKind, origin: StepOrigin, status: StepStatus, asideReason: string | null, hold: Hold | null, untilEnough: boolean, materialVersionId: number | null, material: string | null, solventBorne: boolean }
+  setupMin: number
+  pieceMin: number
+  cleanMin: number
+  dust: 'none' | 'some' | 'much'
+  notOnAt: number | null
+  doing: { by: string, sinceAt: number } | null
+  /** For a check inside a rest or a release: when it is wanted. */
+  wantedAt: number | null
+  waits: WaitState[]
+  plan: PlannedState | null
+}
+
+export interface PieceState {
+  id: number
+  name: string
+  version: number
+  batch: { id: number, name: string }
+  order: { id: number, name: string, dueAt: number | null, promisedAt: number | null } | null
+  groups: GroupState[]
+  turns: TurnState[]
+  stepsDone: number
+  stepsOf: number
+  intake: 'lead' | 'green cloth' | 'mould' | null
+}
+
+export interface PlaceState { id: number, roomId: number, name: string, kind: string, capacity: number, taken: number }
+
+export interface RoomState {
+  id: number
+  name: string
+  heated: boolean
+  outdoor: boolean
+  sprayArea: boolean
+  air: { tempC: number, rh: number, readAt: number | null, assumed: boolean } | null
+  keepOut: { sinceAt: number, opensBy: string | null } | null
+}
+
+/** Like work done together, as the day ruler shows it. */
+export interface SessionState { id: number, family: string, startsAt: number, endsAt: number, lastStartAt: number | null, firstFew: number | null, lastStartFewAt: number | null, turnIds: number[], pieceIds: number[] }
+
+/** The studio as it stands: what the board, the hands and the handling sheet are drawn from. */
+export interface StudioState {
+  at: number
+  revision: number
+  studio: { id: number, name: string, zone: string, units: 'metric' | 'us' }
+  /** Today's hours of the studio, as instants. */
+  hours: { opensAt: number, closesAt: number }[]
+  rooms: RoomState[]
+  places: PlaceState[]
+  pieces: PieceState[]
+  sessions: SessionState[]
+  rags: { roomId: number, room: string, sinceAt: number }[]
+}

@@ -1,0 +1,22 @@
+/** Why an act was not recorded. Each names what stands in the way and what to do instead. */
+export const actRefusals = {
+  somebodyElse: 'Somebody else was at this piece a moment ago. Here is how it stands now; say it again if it still holds.',
+  noPiece: 'One of these pieces is not in this studio.',
+  gonePiece: (name: string) => `${name} has left the studio.`,
+  future: 'The time lies ahead of now. Give the time it was done.',
+  tooOld: 'The time is more than 14 days back. Corrections reach back 14 days.',
+  notYourStep: (kind: string) => `The owner has not given you steps of this kind: ${kind}. Ask a maker to record it.`,
+  mayNotMove: (name: string) => `${name} may not be handled yet. Ask a maker to move it.`,
+  ownActsOnly: 'Only a maker can correct what somebody else recorded.',
+  noStep: 'This step is not one of the piece’s steps.',
+  nothingLeft: 'Nothing of this step is left to do on the piece.',
+  noFilm: 'There is no film on this piece that could be tested.',
+  nothingHeld: 'Nothing of this piece is in clamps, press or under weight.',
+  beforeStart: 'The time lies before the coat went on.',
+  warmAirOnSolvent: 'No warm air on a solvent film: it feeds the vapour. Let the exhaust do it.',
+  noPlace: 'This place is not in this studio.',
+  noMaterial: 'This material is not in this studio.',
+  corrected: 'This entry has been corrected already. Here is how it stands now.',
+  notInPiece: 'One of these parts is not part of the pieces named.',
+  batchStart: 'Take a batch back from its own page.',
+} as const
