@@ -767,6 +767,8 @@ CREATE TABLE `piece` (
 	`size_units` integer DEFAULT 1 NOT NULL,
 	`version` integer DEFAULT 1 NOT NULL,
 	`gone_at` integer,
+	`steps_done` integer DEFAULT 0 NOT NULL,
+	`steps_of` integer DEFAULT 0 NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`batch_id`) REFERENCES `batch`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`branch_id`) REFERENCES `branch`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
@@ -802,6 +804,7 @@ CREATE TABLE `piece_step` (
 	`hands` integer DEFAULT 1 NOT NULL,
 	`dust` text DEFAULT 'none' NOT NULL,
 	`may_run_over` integer DEFAULT false NOT NULL,
+	`at_front` integer DEFAULT false NOT NULL,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,
 	FOREIGN KEY (`studio_id`,`piece_id`) REFERENCES `piece`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
 	FOREIGN KEY (`studio_id`,`schedule_step_id`) REFERENCES `schedule_step`(`studio_id`,`id`) ON UPDATE no action ON DELETE no action,
@@ -818,6 +821,7 @@ CREATE TABLE `piece_step` (
 	CONSTRAINT "piece_step_aside" CHECK(("piece_step"."status" = 'set aside') = ("piece_step"."aside_reason" is not null))
 );
 --> statement-breakpoint
+CREATE INDEX `piece_step_front` ON `piece_step` (`studio_id`,`piece_id`) WHERE "piece_step"."at_front" = 1;--> statement-breakpoint
 CREATE INDEX `piece_step_open` ON `piece_step` (`studio_id`,`piece_id`) WHERE "piece_step"."status" in ('waiting', 'doing', 'resting', 'set aside');--> statement-breakpoint
 CREATE UNIQUE INDEX `piece_step_studio_id_id_unique` ON `piece_step` (`studio_id`,`id`);--> statement-breakpoint
 CREATE UNIQUE INDEX `piece_step_piece_id_key_unique` ON `piece_step` (`piece_id`,`key`);--> statement-breakpoint
@@ -939,6 +943,7 @@ CREATE TABLE `turn` (
 	`minutes` integer NOT NULL,
 	`status` text DEFAULT 'waiting' NOT NULL,
 	`done_at` integer,
+	`began_at` integer,
 	`doing_member_id` integer,
 	`not_on_at` integer,
 	FOREIGN KEY (`studio_id`) REFERENCES `studio`(`id`) ON UPDATE no action ON DELETE cascade,

@@ -89,6 +89,8 @@ export const piece = sqliteTable('piece', {
   sizeUnits: integer('size_units').notNull().default(1),
   version: integer('version').notNull().default(1),
   goneAt: instant('gone_at'),
+  stepsDone: integer('steps_done').notNull().default(0),
+  stepsOf: integer('steps_of').notNull().default(0),
 }, t => [
   studioKey(t), within(t, t.batchId, batch), within(t, t.branchId, branch), unique().on(t.batchId, t.ordinal),
   check('piece_size', sql`${t.sizeUnits} > 0`), index('piece_here').on(t.studioId, t.batchId).where(sql`${t.goneAt} is null`),
@@ -171,6 +173,8 @@ export const pieceStep = sqliteTable('piece_step', {
   hands: integer('hands').notNull().default(1),
   dust: text('dust').$type<DustClass>().notNull().default('none'),
   mayRunOver: flag('may_run_over').notNull().default(false),
+  /** Nothing but drying stands before it, and something of it is left to do: the steps that screens read. */
+  atFront: flag('at_front').notNull().default(false),
 }, t => [
   studioKey(t), within(t, t.pieceId, piece), within(t, t.scheduleStepId, scheduleStep), within(t, t.insertedByActId, act), within(t, t.materialVersionId, materialVersion),
   unique().on(t.pieceId, t.key),
@@ -178,6 +182,7 @@ export const pieceStep = sqliteTable('piece_step', {
   oneOf('piece_step_size', t.coatSize, coatSizes), oneOf('piece_step_ground', t.ground, grounds), oneOf('piece_step_hold', t.hold, holds),
   oneOf('piece_step_place', t.placeKind, placeKinds), oneOf('piece_step_dust', t.dust, dustClasses),
   check('piece_step_aside', sql`(${t.status} = 'set aside') = (${t.asideReason} is not null)`),
+  index('piece_step_front').on(t.studioId, t.pieceId).where(sql`${t.atFront} = 1`),
   index('piece_step_open').on(t.studioId, t.pieceId).where(sql`${t.status} in ('waiting', 'doing', 'resting', 'set aside')`),
 ])
 
@@ -214,6 +219,7 @@ export const turn = sqliteTable('turn', {
   minutes: integer('minutes').notNull(),
   status: text('status').$type<TurnStatus>().notNull().default('waiting'),
   doneAt: instant('done_at'),
+  beganAt: instant('began_at'),
   doingMemberId: integer('doing_member_id'),
   notOnAt: instant('not_on_at'),
 }, t => [

@@ -20,7 +20,7 @@ function seedStep(step: ScheduleEdition['steps'][number], parts: readonly SeedPa
     key: step.key, ordinal: step.ordinal, name: step.name, kind: step.kind, origin: 'schedule', scheduleStepId: step.id, insertedByActId: null,
     materialVersionId, status: 'waiting', asideReason: null, coatSize: step.coatSize, ground: step.ground, hold: step.hold, placeKind: step.placeKind,
     untilEnough: step.untilEnough, setupMin: step.setupMin, pieceMin: step.pieceMin, cleanMin: step.cleanMin, releaseMin: step.releaseMin,
-    hands: step.hands, dust: step.dust, mayRunOver: step.mayRunOver,
+    hands: step.hands, dust: step.dust, mayRunOver: step.mayRunOver, atFront: false,
     targets: step.targets.flatMap(target => targetsOn(parts, target)),
     turns: turnsOf(step),
   }

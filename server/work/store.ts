@@ -18,7 +18,9 @@ export function storeFold(tx: Transaction, studioId: number, { piece: row, parts
   storeAirNotes(tx, studioId, partIds, folded.airNotes)
   storeJoins(tx, studioId, partIds, folded.joins)
   const branchId = storeBranch(tx, studioId, row, folded.branch)
-  tx.update(piece).set({ version: row.version + 1, goneAt: folded.goneAt, branchId }).where(scoped(piece, studioId, eq(piece.id, row.id))).run()
+  const counted = folded.steps.filter(step => step.status !== 'left out')
+  const done = counted.filter(step => step.status === 'done' || (step.status === 'resting' && !step.atFront))
+  tx.update(piece).set({ version: row.version + 1, goneAt: folded.goneAt, branchId, stepsDone: done.length, stepsOf: counted.length }).where(scoped(piece, studioId, eq(piece.id, row.id))).run()
 }
 
 function storeStays(tx: Transaction, studioId: number, partIds: number[], wanted: FoldedPiece['folded']['stays']) {

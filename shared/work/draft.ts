@@ -95,14 +95,14 @@ export function newestCoat(draft: Draft, partIds: Iterable<number>, wanted: (coa
 
 /** A turn that waits. */
 export function waitingTurn(ordinal: number, minutes: number, more: Partial<Turn> = {}): Turn {
-  return { ordinal, day: 0, kind: 'work', name: '', checkAfterMin: null, minutes, status: 'waiting', doneAt: null, doingMemberId: null, notOnAt: null, ...more }
+  return { ordinal, day: 0, kind: 'work', name: '', checkAfterMin: null, minutes, status: 'waiting', doneAt: null, beganAt: null, doingMemberId: null, notOnAt: null, ...more }
 }
 
 /** A step that no schedule asked for, with everything at rest. */
 export function insertedStep(given: Pick<Step, 'key' | 'ordinal' | 'name' | 'kind' | 'origin' | 'insertedByActId' | 'pieceMin' | 'targets'> & Partial<Step>): Step {
   return {
     scheduleStepId: null, materialVersionId: null, status: 'waiting', asideReason: null, coatSize: 'normal', ground: 'primed', hold: null, placeKind: null,
-    untilEnough: false, setupMin: 0, cleanMin: 0, releaseMin: 0, hands: 1, dust: 'none', mayRunOver: false, turns: [waitingTurn(1, given.pieceMin)], ...given,
+    untilEnough: false, setupMin: 0, cleanMin: 0, releaseMin: 0, hands: 1, dust: 'none', mayRunOver: false, atFront: false, turns: [waitingTurn(1, given.pieceMin)], ...given,
   }
 }
 

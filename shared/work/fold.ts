@@ -48,6 +48,7 @@ export function fold(seed: Seed, acts: readonly WorkAct[]): Folded {
   const draft = startDraft(seed)
   for (const act of inOrder(acts)) tellings[act.kind](draft, act)
   closeRests(draft)
+  findFront(draft)
   const { parts: _, ...folded } = draft
   return folded
 }
@@ -66,5 +67,15 @@ function closeRests(draft: Draft) {
     if (held) continue
     const followed = draft.links.some(link => link.from === step.key && begun.has(link.to))
     if (followed || (step.hold !== null && draft.coats.some(coat => coat.turn?.step === step.key && coat.outAt !== null))) step.status = 'done'
+  }
+}
+
+/** Marks the steps whose turn it is: what comes before them is done, left out or only drying. */
+function findFront(draft: Draft) {
+  const behind = new Set(draft.steps.filter(step => ['resting', 'done', 'left out'].includes(step.status)).map(step => step.key))
+  for (const step of draft.steps) {
+    const left = step.turns.some(turn => turn.status === 'waiting' || turn.status === 'doing')
+    const reached = step.status !== 'waiting' || draft.links.every(link => link.to !== step.key || behind.has(link.from))
+    step.atFront = draft.goneAt === null && left && reached && step.status !== 'left out' && step.status !== 'done'
   }
 }

@@ -9,6 +9,7 @@ export function began(draft: Draft, act: WorkAct) {
   if (!step || !turn) return cannotBe(draft, act, step ? 'nothing left to do' : 'no such step')
   turn.status = 'doing'
   turn.doingMemberId = act.memberId
+  turn.beganAt = latestAt(act)
   step.status = 'doing'
 }
 
@@ -53,6 +54,12 @@ export function leftOut(draft: Draft, act: WorkAct) {
   step.status = 'left out'
   step.asideReason = null
   for (const turn of step.turns) if (turn.status !== 'done') turn.status = 'left out'
+  for (const before of draft.links.filter(link => link.to === step.key)) {
+    for (const after of draft.links.filter(link => link.from === step.key)) {
+      if (draft.links.some(link => link.from === before.from && link.to === after.to)) continue
+      draft.links.push({ ...before, to: after.to })
+    }
+  }
 }
 
 /** "Not on yet": the planned start has passed and somebody says that nothing went on. */

@@ -15,6 +15,7 @@ export interface Turn {
   minutes: number
   status: TurnStatus
   doneAt: number | null
+  beganAt: number | null
   doingMemberId: number | null
   /** When somebody last said that it has not gone on yet. */
   notOnAt: number | null
@@ -43,6 +44,8 @@ export interface Step {
   hands: number
   dust: DustClass
   mayRunOver: boolean
+  /** Nothing but drying stands before it, and something of it is left to do. */
+  atFront: boolean
   targets: Target[]
   turns: Turn[]
 }

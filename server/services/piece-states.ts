@@ -1,0 +1,157 @@
+import { memberNames } from '~~/server/services/member-names'
+import { readPieceRows } from '~~/server/services/piece-rows'
+import type { PieceRows } from '~~/server/services/piece-rows'
+import type { Database, Transaction } from '~~/server/utils/database'
+import { milestoneNames } from '#shared/terms'
+import type { MilestoneName } from '#shared/terms'
+import type { FilmState, GroupState, PieceState, TurnState, WaitState } from '#shared/schemas/piece-state'
+
+type Reader = Database | Transaction
+type PartRow = PieceRows['parts'][number]
+type StepRow = PieceRows['steps']['steps'][number]
+type TurnRow = PieceRows['steps']['turns'][number]
+
+const by = <Row>(rows: readonly Row[], key: (row: Row) => number | null) => {
+  const map = new Map<number, Row[]>()
+  for (const row of rows) {
+    const found = key(row)
+    if (found === null) continue
+    const list = map.get(found)
+    if (list) list.push(row)
+    else map.set(found, [row])
+  }
+  return map
+}
+
+/**
+ * How pieces stand: where, with which films and their times, and what can be done next. The one source of every
+ * screen, feed and message; the verdict is computed from it by `shared/verdict`, here and in the browser alike.
+ * @param pieceIds only these; null means every piece in the studio
+ */
+export function pieceStates(db: Reader, studioId: number, pieceIds: readonly number[] | null): PieceState[] {
+  const rows = readPieceRows(db, studioId, pieceIds)
+  const films = filmStates(rows.films)
+  const filmsOf = by(films, film => film.pieceId)
+  const partsOf = by(rows.parts, row => row.pieceId)
+  const turns = turnStates(rows, films, memberNames(db, studioId))
+  const turnsOf = by(turns, row => row.pieceId)
+  return rows.pieces.map(row => ({
+    id: row.id, name: row.name, version: row.version, batch: { id: row.batchId, name: row.batchName },
+    order: row.orderId === null || row.orderName === null ? null : { id: row.orderId, name: row.orderName, dueAt: row.dueAt, promisedAt: row.promisedAt },
+    groups: groupsOf(partsOf.get(row.id) ?? [], (filmsOf.get(row.id) ?? []).map(film => film.state)),
+    turns: (turnsOf.get(row.id) ?? []).map(turn => turn.state),
+    stepsDone: row.stepsDone, stepsOf: row.stepsOf,
+    intake: rows.intakes.find(each => each.pieceId === row.id)?.question ?? null,
+  }))
+}
+
+interface PieceFilm { pieceId: number, stepId: number | null, state: FilmState }
+
+function filmStates(rows: PieceRows['films']): PieceFilm[] {
+  const targets = by(rows.targets, row => row.coatId)
+  const milestones = by(rows.milestones, row => row.coatId)
+  const windows = by(rows.windows, row => row.coatId)
+  const doubts = by(rows.doubts, row => row.coatId)
+  return rows.coats.map((row): PieceFilm => {
+    const on = targets.get(row.id) ?? []
+    return {
+      pieceId: row.pieceId, stepId: row.stepId,
+      state: {
+        coatId: row.id, actId: row.actId, kind: row.materialKind === 'size' ? 'size' : row.kind, step: row.step, material: row.material, materialVersionId: row.versionId,
+        solventBorne: row.solvent !== null && !['water', 'none'].includes(row.solvent), mustLieLevel: row.mustLieLevel ?? false, glovesUntil: row.glovesUntil,
+        partIds: [...new Set(on.map(each => each.partId))], faces: on.flatMap(each => each.face ?? []), layer: on.reduce((top, each) => Math.max(top, each.layer), 1),
+        beganAt: row.beganAt, endedAt: row.endedAt, hold: row.outAt === null ? row.hold : null,
+        milestones: (milestones.get(row.id) ?? []).map(each => ({ name: each.milestone, likelyAt: each.likelyAt, p90At: each.p90At, p98At: each.p98At, reachedAt: each.reachedAt, reason: each.reason })),
+        windows: (windows.get(row.id) ?? []).map(each => ({ opensAt: each.opensAt, shutsAt: each.shutsAt })),
+        doubts: (doubts.get(row.id) ?? []).map(each => ({ cause: each.cause, fromAt: each.fromAt })),
+      },
+    }
+  })
+}
+
+/** Parts joined to one another, directly or through a third, stand and are judged as one. */
+function groupsOf(parts: readonly PartRow[], films: readonly FilmState[]): GroupState[] {
+  const mainOf = (row: PartRow): number => {
+    let now = row
+    for (let depth = 0; now.into !== null && depth < parts.length; depth++) now = parts.find(each => each.id === now.into) ?? { ...now, into: null }
+    return now.id
+  }
+  return [...by(parts, mainOf)].map(([mainId, together]): GroupState => {
+    const main = together.find(row => row.id === mainId) ?? together[0]
+    const ids = new Set(together.map(row => row.id))
+    return {
+      parts: together.map(row => ({ partId: row.id, key: row.key, name: row.name, grip: row.grip, missingAt: row.missingAt, seenAt: row.seenAt })),
+      placeId: main?.placeId ?? null, roomId: main?.roomId ?? null, carrier: main?.carrier ?? null,
+      films: films.filter(film => film.partIds.some(id => ids.has(id))),
+    }
+  })
+}
+
+interface PieceTurn { pieceId: number, state: TurnState }
+
+function turnStates(rows: PieceRows, films: readonly PieceFilm[], names: ReadonlyMap<number, string>): PieceTurn[] {
+  const { steps, turns, links, before, entries } = rows.steps
+  const turnsOf = by(turns, row => row.stepId)
+  const linksTo = by(links, row => row.toStepId)
+  const beforeById = new Map(before.map(row => [row.id, row]))
+  const entryOf = new Map(entries.map(entry => [entry.turnId, entry]))
+  const filmsOfStep = by(films, film => film.stepId)
+  return steps.flatMap((row): PieceTurn[] => {
+    const all = turnsOf.get(row.step.id) ?? []
+    const waits = (linksTo.get(row.step.id) ?? []).map((link): WaitState => {
+      const from = beforeById.get(link.fromStepId)
+      return waitOf(from?.name ?? '', from?.status ?? 'done', link, newest(filmsOfStep.get(link.fromStepId)))
+    })
+    return nextTurns(all).map(turn => ({ pieceId: row.step.pieceId, state: turnState(row, turn, all, [...waits, ...ownWaits(row, turn, all, newest(filmsOfStep.get(row.step.id)))], newest(filmsOfStep.get(row.step.id)), entryOf.get(turn.id) ?? null, names) }))
+  })
+}
+
+const newest = (films: readonly PieceFilm[] | undefined): FilmState | null => films?.[films.length - 1]?.state ?? null
+
+/** Of each kind the one being done or the first that waits. A release waits for nothing but its time, so it shows beside a check. */
+function nextTurns(turns: readonly TurnRow[]): TurnRow[] {
+  const open = turns.filter(turn => turn.status === 'doing' || turn.status === 'waiting')
+  const work = open.find(turn => turn.kind === 'work')
+  if (work) return [open.find(turn => turn.status === 'doing') ?? work]
+  return [open.find(turn => turn.kind === 'check'), open.find(turn => turn.kind === 'release')].filter(turn => turn !== undefined)
+}
+
+function waitOf(what: string, status: StepRow['step']['status'], link: { milestone: WaitState['milestone'], risk: WaitState['risk'], windowed: boolean }, film: FilmState | null): WaitState {
+  const behind = status === 'done' || status === 'resting' || status === 'left out'
+  const rung = link.milestone === null || !film ? null : rungAt(film, link.milestone)
+  return { what, done: behind, milestone: link.milestone, risk: link.risk, film: rung, windows: link.windowed && film ? film.windows : [] }
+}
+
+/** The rung asked for, or the next higher one where this material's ladder has not got it. */
+function rungAt(film: FilmState, name: MilestoneName) {
+  const wanted = milestoneNames.indexOf(name)
+  return film.milestones.find(each => each.name === name) ?? film.milestones.find(each => milestoneNames.findIndex(one => one === each.name) >= wanted) ?? film.milestones[film.milestones.length - 1] ?? null
+}
+
+/** The next coat of a round waits for the one before it, whatever the schedule's links say. */
+function ownWaits(row: StepRow, turn: TurnRow, all: readonly TurnRow[], film: FilmState | null): WaitState[] {
+  const again = turn.kind === 'work' && all.some(each => each.kind === 'work' && each.status === 'done')
+  if (!again || !film) return []
+  return [waitOf(row.step.name, 'resting', { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }, film)]
+}
+
+function turnState(row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, names: ReadonlyMap<number, string>): TurnState {
+  const { step } = row
+  const alike = all.filter(each => each.kind === turn.kind)
+  return {
+    turnId: turn.id, kind: turn.kind, name: turn.name, no: alike.indexOf(turn) + 1, of: alike.length, status: turn.status,
+    step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough, materialVersionId: step.materialVersionId, material: row.material, solventBorne: row.solvent !== null && !['water', 'none'].includes(row.solvent) },
+    setupMin: step.setupMin, pieceMin: turn.kind === 'work' ? step.pieceMin : turn.minutes, cleanMin: step.cleanMin, dust: step.dust, notOnAt: turn.notOnAt,
+    doing: turn.status === 'doing' ? { by: names.get(turn.doingMemberId ?? 0) ?? '', sinceAt: turn.beganAt ?? 0 } : null,
+    wantedAt: wantedAt(turn, film),
+    waits,
+    plan: entry && { startsAt: entry.startsAt, endsAt: entry.endsAt, dueAt: entry.dueAt, memberId: entry.memberId, sessionId: entry.sessionId, lastStartAt: entry.lastStartAt, firstFew: entry.firstFew, lastStartFewAt: entry.lastStartFewAt, afterTest: entry.afterTest },
+  }
+}
+
+function wantedAt(turn: TurnRow, film: FilmState | null): number | null {
+  if (!film) return null
+  if (turn.kind === 'check' && turn.checkAfterMin !== null) return film.endedAt + turn.checkAfterMin * 60_000
+  if (turn.kind === 'release') return film.milestones.find(each => each.name === 'out-of-clamps')?.p90At ?? null
+  return null
+}
