@@ -1,7 +1,7 @@
 import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
 import { act, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
-import { change } from '~~/server/services/changes'
+import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
 import { mayHandle } from '~~/server/services/handling'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -42,7 +42,7 @@ export function recordAct(db: Database, studioId: number, teller: Teller, reques
   if (before) return { ok: true, actId: before.id, repeated: true }
   const body = parseActBody(request.kind, request.body)
   if (isRefusal(body)) return body
-  return change<Recorded | Refusal>(db, studioId, (tx) => {
+  return change<Recorded | Refusal>(db, studioId, 'work', (tx): Recorded | Refusal => {
     const pieces = findPieces(tx, studioId, request.pieces.map(each => each.id))
     const refusal = pieces.length < request.pieces.length ? absent(actRefusals.noPiece) : findRefusal(tx, studioId, teller, request, body, pieces, now)
     if (refusal) return refusal
@@ -82,7 +82,7 @@ function findPieces(tx: Transaction, studioId: number, ids: readonly number[]): 
 function findRefusal(tx: Transaction, studioId: number, teller: Teller, request: ActRequest, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
   const gone = pieces.find(each => each.goneAt !== null)
   if (gone) return impossible(actRefusals.gonePiece(gone.name))
-  if (request.pieces.some(each => pieces.find(row => row.id === each.id)?.version !== each.version)) return conflict(actRefusals.somebodyElse, pieceStates(tx, studioId, pieces.map(each => each.id), now))
+  if (request.pieces.some(each => pieces.find(row => row.id === each.id)?.version !== each.version)) return conflict(actRefusals.somebodyElse, pieceStates(tx, studioId, pieces.map(each => each.id)))
   return checkTime(Date.parse(request.doneAt), now)
     ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
     ?? checkReferences(tx, studioId, body)
@@ -128,7 +128,7 @@ function checkReferences(tx: Transaction, studioId: number, body: Record<string,
 }
 
 function checkWarmAir(tx: Transaction, studioId: number, pieces: PieceRow[]): Refusal | null {
-  const states = pieceStates(tx, studioId, pieces.map(each => each.id), 0)
+  const states = pieceStates(tx, studioId, pieces.map(each => each.id))
   return states.some(state => state.groups.some(group => group.films.some(film => film.solventBorne))) ? impossible(actRefusals.warmAirOnSolvent) : null
 }
 

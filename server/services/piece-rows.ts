@@ -1,5 +1,5 @@
 import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm'
-import { batch, carrier, coat, coatTarget, doubt, face, intake, material, materialVersion, order, part, piece, pieceStep, plan, planEntry, place, prediction, stay, stepLink, turn, windowPrediction } from '~~/db/schema'
+import { batch, carrier, coat, coatTarget, doubt, face, intake, material, materialVersion, order, part, piece, pieceStep, plan, planEntry, place, prediction, stay, stepLink, stepTarget, turn, windowPrediction } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 
@@ -59,7 +59,8 @@ function readSteps(db: Reader, studioId: number, only: number[] | null) {
   const links = db.select({ link: stepLink }).from(pieceStep).innerJoin(stepLink, eq(stepLink.toStepId, pieceStep.id)).where(front).all().map(row => row.link)
   const entries = db.select({ entry: planEntry }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).innerJoin(turn, eq(turn.id, planEntry.turnId))
     .where(scoped(plan, studioId, sql`${plan.current} = 1`, only ? inArray(planEntry.turnId, turns.map(each => each.id)) : undefined)).all().map(row => row.entry)
-  return { steps, turns, links, before: readBefore(db, studioId, links.map(link => link.fromStepId)), entries }
+  const targets = db.selectDistinct({ stepId: stepTarget.stepId, partId: stepTarget.partId }).from(pieceStep).innerJoin(stepTarget, eq(stepTarget.stepId, pieceStep.id)).where(front).all()
+  return { steps, turns, targets, links, before: readBefore(db, studioId, links.map(link => link.fromStepId)), entries }
 }
 
 /** The steps that the front waits for: their names, and whether they are done. */

@@ -90,7 +90,8 @@ function groupsOf(parts: readonly PartRow[], films: readonly FilmState[]): Group
 interface PieceTurn { pieceId: number, state: TurnState }
 
 function turnStates(rows: PieceRows, films: readonly PieceFilm[], names: ReadonlyMap<number, string>): PieceTurn[] {
-  const { steps, turns, links, before, entries } = rows.steps
+  const { steps, turns, targets, links, before, entries } = rows.steps
+  const targetsOf = by(targets, row => row.stepId)
   const turnsOf = by(turns, row => row.stepId)
   const linksTo = by(links, row => row.toStepId)
   const beforeById = new Map(before.map(row => [row.id, row]))
@@ -102,7 +103,7 @@ function turnStates(rows: PieceRows, films: readonly PieceFilm[], names: Readonl
       const from = beforeById.get(link.fromStepId)
       return waitOf(from?.name ?? '', from?.status ?? 'done', link, newest(filmsOfStep.get(link.fromStepId)))
     })
-    return nextTurns(all).map(turn => ({ pieceId: row.step.pieceId, state: turnState(row, turn, all, [...waits, ...ownWaits(row, turn, all, newest(filmsOfStep.get(row.step.id)))], newest(filmsOfStep.get(row.step.id)), entryOf.get(turn.id) ?? null, names) }))
+    return nextTurns(all).map(turn => ({ pieceId: row.step.pieceId, state: turnState(row, turn, all, [...waits, ...ownWaits(row, turn, all, newest(filmsOfStep.get(row.step.id)))], newest(filmsOfStep.get(row.step.id)), entryOf.get(turn.id) ?? null, names, (targetsOf.get(row.step.id) ?? []).map(each => each.partId)) }))
   })
 }
 
@@ -135,11 +136,11 @@ function ownWaits(row: StepRow, turn: TurnRow, all: readonly TurnRow[], film: Fi
   return [waitOf(row.step.name, 'resting', { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }, film)]
 }
 
-function turnState(row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, names: ReadonlyMap<number, string>): TurnState {
+function turnState(row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, names: ReadonlyMap<number, string>, partIds: number[]): TurnState {
   const { step } = row
   const alike = all.filter(each => each.kind === turn.kind)
   return {
-    turnId: turn.id, kind: turn.kind, name: turn.name, no: alike.indexOf(turn) + 1, of: alike.length, status: turn.status,
+    turnId: turn.id, partIds, kind: turn.kind, name: turn.name, no: alike.indexOf(turn) + 1, of: alike.length, status: turn.status,
     step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough, materialVersionId: step.materialVersionId, material: row.material, solventBorne: row.solvent !== null && !['water', 'none'].includes(row.solvent) },
     setupMin: step.setupMin, pieceMin: turn.kind === 'work' ? step.pieceMin : turn.minutes, cleanMin: step.cleanMin, dust: step.dust, notOnAt: turn.notOnAt,
     doing: turn.status === 'doing' ? { by: names.get(turn.doingMemberId ?? 0) ?? '', sinceAt: turn.beganAt ?? 0 } : null,

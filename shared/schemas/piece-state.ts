@@ -70,6 +70,8 @@ export interface PlannedState {
 /** A turn that is being done or could be next. */
 export interface TurnState {
   turnId: number
+  /** The parts that the step is about. */
+  partIds: number[]
   kind: TurnKind
   name: string
   no: number

@@ -1,0 +1,42 @@
+import { and, asc, eq, isNull, sql } from 'drizzle-orm'
+import { keepOut, place, room, stay, part, piece, studio } from '~~/db/schema'
+import { memberNames } from '~~/server/services/member-names'
+import type { Database, Transaction } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { roomAirs } from '~~/server/work/air'
+import { airTables } from '#shared/air/tables'
+import { airAt, roomTrack } from '#shared/air/room'
+import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
+
+type Reader = Database | Transaction
+
+const tables = airTables()
+
+/** The rooms with their air now and whether anybody must stay out. */
+export function roomStates(db: Reader, studioId: number, now: number): RoomState[] {
+  const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
+  if (!owner) return []
+  const airs = roomAirs(db, owner, now)
+  const shut = db.select().from(keepOut).where(scoped(keepOut, studioId, isNull(keepOut.openedAt))).all()
+  const names = shut.length > 0 ? memberNames(db, studioId) : new Map<number, string>()
+  return db.select().from(room).where(scoped(room, studioId)).orderBy(asc(room.sort), asc(room.id)).all().map((row): RoomState => {
+    const known = airs.get(row.id)
+    const closed = shut.find(each => each.roomId === row.id)
+    const air = known && airAt(roomTrack(known, tables), now)
+    return {
+      id: row.id, name: row.name, heated: row.heated, outdoor: row.outdoor, sprayArea: row.sprayArea,
+      air: air ? { tempC: air.tempC, rh: air.rh, readAt: known.readings.filter(each => each.at <= now).at(-1)?.at ?? null, assumed: air.assumed } : null,
+      keepOut: closed ? { sinceAt: closed.fromAt, opensBy: names.get(closed.opensByMemberId ?? 0) ?? null } : null,
+    }
+  })
+}
+
+/** The places with how many size units stand there now. */
+export function placeStates(db: Reader, studioId: number): PlaceState[] {
+  const taken = db.select({ placeId: stay.placeId, units: sql<number>`sum(${piece.sizeUnits})` }).from(stay)
+    .innerJoin(part, eq(part.id, stay.partId)).innerJoin(piece, and(eq(piece.id, part.pieceId), isNull(piece.goneAt)))
+    .where(scoped(stay, studioId, isNull(stay.toAt))).groupBy(stay.placeId).all()
+  const units = new Map(taken.map(row => [row.placeId, row.units]))
+  return db.select().from(place).where(scoped(place, studioId)).orderBy(asc(place.sort), asc(place.id)).all()
+    .map(row => ({ id: row.id, roomId: row.roomId, name: row.name, kind: row.kind, capacity: row.capacity, taken: units.get(row.id) ?? 0 }))
+}

@@ -1,0 +1,58 @@
+import { and, eq, inArray, isNull } from 'drizzle-orm'
+import { coat, intake, keepOut, materialVersion, part, place, ragDuty, room, stay } from '~~/db/schema'
+import type { Transaction } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { predictPieces } from '~~/server/work/predict'
+import type { ActKind } from '#shared/terms'
+
+interface Told { actId: number, kind: ActKind, body: Record<string, unknown>, pieceIds: number[], memberId: number | null, now: number }
+
+/** What an act brings with it beyond the piece itself: times, rooms nobody enters, rags to be dealt with, answers. */
+export function afterAct(tx: Transaction, studioId: number, told: Told) {
+  if (told.kind === 'intake answered') answerIntake(tx, studioId, told)
+  if (told.kind === 'coat on' || told.kind === 'glue-up on') noteVapourAndRags(tx, studioId, told)
+  predictPieces(tx, studioId, told.pieceIds, told.now)
+}
+
+function answerIntake(tx: Transaction, studioId: number, told: Told) {
+  const { question, answer } = told.body
+  if (question !== 'lead' && question !== 'green cloth' && question !== 'mould') return
+  if (answer !== 'not tested' && answer !== 'tested, none' && answer !== 'tested, found') return
+  for (const pieceId of told.pieceIds) {
+    tx.insert(intake).values({ studioId, pieceId, question, answer }).onConflictDoUpdate({ target: [intake.pieceId, intake.question], set: { answer } }).run()
+  }
+}
+
+/** A solvent film in the spray area shuts the room; a drying oil leaves rags. Both are per room, once. */
+function noteVapourAndRags(tx: Transaction, studioId: number, told: Told) {
+  const coats = tx.select({ endedAt: coat.endedAt, solvent: materialVersion.solvent, dryingOil: materialVersion.dryingOil, roomId: room.id, sprayArea: room.sprayArea })
+    .from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId))
+    .innerJoin(part, eq(part.pieceId, coat.pieceId)).innerJoin(stay, and(eq(stay.partId, part.id), isNull(stay.toAt)))
+    .innerJoin(place, eq(place.id, stay.placeId)).innerJoin(room, eq(room.id, place.roomId))
+    .where(scoped(coat, studioId, eq(coat.actId, told.actId), inArray(coat.pieceId, told.pieceIds))).all()
+  const rooms = new Map<number, { endedAt: number, shuts: boolean, rags: boolean }>()
+  for (const each of coats) {
+    const known = rooms.get(each.roomId) ?? { endedAt: 0, shuts: false, rags: false }
+    rooms.set(each.roomId, {
+      endedAt: Math.max(known.endedAt, each.endedAt),
+      shuts: known.shuts || (each.sprayArea && !['water', 'none'].includes(each.solvent)),
+      rags: known.rags || each.dryingOil,
+    })
+  }
+  for (const [roomId, { endedAt, shuts, rags }] of rooms) {
+    if (shuts) shutRoom(tx, studioId, roomId, endedAt, told)
+    if (rags) askForRags(tx, studioId, roomId, endedAt, told)
+  }
+}
+
+function shutRoom(tx: Transaction, studioId: number, roomId: number, fromAt: number, told: Told) {
+  const shut = tx.select({ id: keepOut.id }).from(keepOut).where(scoped(keepOut, studioId, eq(keepOut.roomId, roomId), isNull(keepOut.openedAt))).get()
+  if (shut) return
+  tx.insert(keepOut).values({ studioId, roomId, fromActId: told.actId, fromAt, opensByMemberId: told.memberId }).run()
+}
+
+function askForRags(tx: Transaction, studioId: number, roomId: number, lastOilAt: number, told: Told) {
+  const open = tx.select().from(ragDuty).where(scoped(ragDuty, studioId, eq(ragDuty.roomId, roomId), isNull(ragDuty.answeredAt))).get()
+  if (!open) tx.insert(ragDuty).values({ studioId, roomId, lastOilAt, lastOilActId: told.actId }).run()
+  else if (lastOilAt > open.lastOilAt) tx.update(ragDuty).set({ lastOilAt, lastOilActId: told.actId }).where(scoped(ragDuty, studioId, eq(ragDuty.id, open.id))).run()
+}
