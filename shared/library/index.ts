@@ -5,15 +5,15 @@ import { paintMaterials } from '#shared/library/materials/paints'
 import { sizeMaterials } from '#shared/library/materials/sizes'
 import { varnishMaterials } from '#shared/library/materials/varnishes'
 import { waterGlueMaterials } from '#shared/library/materials/water-glues'
+import { librarySchedules } from '#shared/library/schedules'
 import type { LibraryMaterial, LibrarySchedule } from '#shared/library/types'
+
+export { librarySchedules }
 
 /** Every material of the starter library. */
 export const libraryMaterials: readonly LibraryMaterial[] = [
   ...groundMaterials, ...paintMaterials, ...varnishMaterials, ...lacquerMaterials, ...sizeMaterials, ...waterGlueMaterials, ...otherGlueMaterials,
 ]
-
-/** Every finishing schedule of the starter library. */
-export const librarySchedules: readonly LibrarySchedule[] = []
 
 /** A library material by key, or null. */
 export function findLibraryMaterial(key: string): LibraryMaterial | null {

@@ -1,0 +1,63 @@
+import { describe, expect, it } from 'vitest'
+import { cautionDeferral, cautions, findCaution } from '#shared/library/cautions'
+import type { CautionKey } from '#shared/library/cautions'
+import { libraryMaterials } from '#shared/library/index'
+import { librarySchedules } from '#shared/library/schedules'
+import { systemRules } from '#shared/library/systems'
+
+const carries = (keys: readonly CautionKey[], wanted: readonly CautionKey[]) => wanted.filter(key => !keys.includes(key))
+
+describe('cautions', () => {
+  it('are carried by every material of their kind', () => {
+    for (const m of libraryMaterials) {
+      const wanted: CautionKey[] = []
+      if (!['water', 'none'].includes(m.solvent)) wanted.push('vapour', 'flames', 'fan', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can')
+      if (m.dryingOil) wanted.push('oily rags', 'waste can', 'sleeping room')
+      if (m.isocyanate) wanted.push('isocyanate')
+      if (m.key.startsWith('epoxy')) wanted.push('epoxy skin', 'part-cured dust', 'exotherm')
+      if (m.key === 'cyanoacrylate') wanted.push('cyanoacrylate')
+      if (m.key.startsWith('spray')) wanted.push('aerosol')
+      if (m.kind === 'wax') wanted.push('wax early')
+      if (['shellac', 'nitrocellulose-lacquer'].includes(m.key)) wanted.push('blush')
+      if (m.milestones.some(rung => rung.name === 'dry-to-sand-flat') && m.kind !== 'ground' && m.key !== 'heavy-body-acrylic') wanted.push('sanding dust')
+      expect(carries(m.cautions, wanted), m.key).toEqual([])
+    }
+  })
+
+  it('mark oils by what they are: whatever cures by taking in air leaves oily rags', () => {
+    for (const m of libraryMaterials) expect(m.dryingOil, m.key).toBe(m.milestones.some(rung => rung.driver === 'oxidation'))
+  })
+
+  it('ask for gloves until cured on everything two-part or with isocyanate', () => {
+    for (const m of libraryMaterials) {
+      const reacts = m.isocyanate || m.milestones.some(rung => rung.driver === 'reaction')
+      expect(m.glovesUntil, m.key).toBe(reacts ? 'cured' : null)
+    }
+  })
+
+  it('are each known, and each used or meant for a step or an old object', () => {
+    const used = new Set<string>(libraryMaterials.flatMap(m => m.cautions))
+    for (const key of used) expect(findCaution(key), key).not.toBeNull()
+    const ofSteps = ['old paint', 'green cloth', 'paint stripper']
+    expect(cautions.map(c => c.key).filter(key => !used.has(key)).sort()).toEqual(ofSteps.sort())
+    expect(findCaution('gravity')).toBeNull()
+  })
+
+  it('are short and plain and leave the deferral to be said once', () => {
+    for (const { key, text } of cautions) {
+      expect(text.endsWith('.'), key).toBe(true)
+      expect(text, key).not.toContain(cautionDeferral)
+      expect(text, key).not.toMatch(/!/)
+      for (const sentence of text.split(/[.:] /)) expect(sentence.split(' ').length, sentence).toBeLessThanOrEqual(32)
+    }
+    expect(new Set(cautions.map(c => c.text)).size).toBe(cautions.length)
+    expect(cautionDeferral).toMatch(/safety data sheet and your local rules\.$/)
+  })
+})
+
+describe('the words of the library', () => {
+  it('never promise: the four letters stand only in "safety data sheet"', () => {
+    const words = JSON.stringify([libraryMaterials, librarySchedules, systemRules, cautions, cautionDeferral])
+    expect(words.replaceAll('safety data sheet', '')).not.toMatch(/safe/i)
+  })
+})
