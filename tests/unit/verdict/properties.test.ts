@@ -44,7 +44,7 @@ const aPart = (partId: number): fc.Arbitrary<PartFacts> => fc.record({
 }).map(facts => ({ ...facts, partId, name: `part ${partId}`, place: { room: 'Bench room', place: 'Shelf A' } }))
 
 const aPiece = fc.tuple(aPart(1), aPart(2), fc.boolean()).map(([one, two, both]) => both ? [one, two] : [one])
-const many = { numRuns: 4000 }
+const many = { numRuns: 2000 }
 
 describe('properties of the verdict', () => {
   it('a coat added never improves', () => {

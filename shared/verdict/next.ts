@@ -1,0 +1,61 @@
+import { liftingTime } from '#shared/verdict/verdict'
+import type { StepKind } from '#shared/terms'
+import type { Verdict, VerdictKind } from '#shared/verdict/types'
+
+/** The last moment to start a step, ms UTC, counted back from a window's early end at `shutsAt`. `pieces`: how many of how many can then still be done. */
+export interface LastStart { stepId: number, stepKind: StepKind, at: number, what: string, shutsAt: number | null, pieces: { some: number, all: number } | null }
+
+/** When a waiting step may begin (`MayBegin.from`), ms UTC. `what` is the step's name. */
+export interface Beginning { stepId: number, stepKind: StepKind, at: number, what: string }
+
+/** An attended check inside a rest, or the taking out of clamps, ms UTC. `what` says what to do: "change the blotters". */
+export interface DueCheck { at: number, what: string }
+
+/** Everything the next moment of a piece is chosen from. */
+export interface NextFacts {
+  verdict: Pick<Verdict, 'betterAt' | 'betterKind' | 'betterGrip'>
+  lastStarts: readonly LastStart[]
+  mayBegins: readonly Beginning[]
+  checks: readonly DueCheck[]
+}
+
+/** `what` is the name of the step or check, or what the verdict gets better to. `open` and `due`: already so. */
+export type NextMoment =
+  | { kind: 'start by', at: number, what: string, stepKind: StepKind, shutsAt: number | null, pieces: { some: number, all: number } | null }
+  | { kind: 'may begin', at: number, what: string, stepKind: StepKind, open: boolean }
+  | { kind: 'better', at: number, what: VerdictKind, grip: string | null }
+  | { kind: 'check', at: number, what: string, due: boolean }
+
+/** Of one step's last moments the first that can still be kept; when all are past, the last of them. */
+function standing(starts: readonly LastStart[], now: number): LastStart[] {
+  const byStep = new Map<number, LastStart>()
+  for (const start of starts) {
+    const known = byStep.get(start.stepId)
+    const better = !known || (start.at >= now && (known.at < now || start.at < known.at)) || (known.at < now && start.at > known.at)
+    if (better) byStep.set(start.stepId, start)
+  }
+  return [...byStep.values()]
+}
+
+/**
+ * The next moment of a piece, one for all screens: the first of last moment to start, may begin, verdict gets better,
+ * due check; what is past counts as now, and of equals the earlier named speaks. A step that may already begin and has
+ * a last moment to start speaks by that alone, so that a window's end never stands where hands must start earlier.
+ * @param now ms UTC
+ * @param heardAt as for `pieceVerdict`: a page cut off opens nothing by its own clock
+ */
+export function nextMoment(facts: NextFacts, now: number, heardAt: number | null): NextMoment | null {
+  const lifting = liftingTime(now, heardAt)
+  const starts = standing(facts.lastStarts, now)
+  const pressed = new Set(starts.map(start => start.stepId))
+  const { betterAt, betterKind, betterGrip } = facts.verdict
+  const moments: NextMoment[] = [
+    ...starts.map(({ at, what, stepKind, shutsAt, pieces }) => ({ kind: 'start by' as const, at, what, stepKind, shutsAt, pieces })),
+    ...facts.mayBegins.filter(({ stepId, at }) => at > now || !pressed.has(stepId))
+      .map(({ at, what, stepKind }) => ({ kind: 'may begin' as const, at, what, stepKind, open: at <= lifting })),
+    ...betterAt !== null && betterKind ? [{ kind: 'better' as const, at: betterAt, what: betterKind, grip: betterGrip }] : [],
+    ...facts.checks.map(({ at, what }) => ({ kind: 'check' as const, at, what, due: at <= now })),
+  ]
+  const first = (a: NextMoment, b: NextMoment) => Math.max(b.at, now) < Math.max(a.at, now) ? b : a
+  return moments.length === 0 ? null : moments.reduce(first)
+}

@@ -1,0 +1,83 @@
+import { clockTime, roughTime } from '#shared/time'
+import { betterText, predictionReason } from '#shared/words/verdict'
+import { lowerFirst, milestoneText, stepAct, stepNoun } from '#shared/words/steps'
+import type { BeginReason, StepState } from '#shared/verdict/begin'
+import type { NextMoment } from '#shared/verdict/next'
+import type { Clock } from '#shared/time'
+import type { DoubtCause, Hold, StepKind, StepStatus } from '#shared/terms'
+
+type StartBy = Extract<NextMoment, { kind: 'start by' }>
+
+function startText({ at, what, stepKind, pieces }: StartBy, clock: Clock): string {
+  const noun = stepNoun(stepKind, what)
+  const done = pieces === null || pieces.all === 1 ? ''
+    : pieces.some < pieces.all ? ` to do the first ${pieces.some} of ${pieces.all}`
+      : pieces.all === 2 ? ' to do both' : ` to do all ${pieces.all}`
+  if (at < clock.now) return `late: ${noun} was to start by ${clockTime(at, clock)}${done}`
+  return `start ${noun} by ${roughTime(at, clock, 'down')}${done}`
+}
+
+/** The next moment of a piece: "sand lightly from 13:55", "start second varnish by 14:35 to do both", "hold by the back from 15:20". */
+export function momentText(moment: NextMoment, clock: Clock): string {
+  switch (moment.kind) {
+    case 'start by': return startText(moment, clock)
+    case 'may begin': {
+      const act = stepAct(moment.stepKind, moment.what)
+      return moment.open ? act : `${act} from ${roughTime(moment.at, clock, 'up')}`
+    }
+    case 'better': return betterText({ betterAt: moment.at, betterKind: moment.what, betterGrip: moment.grip }, clock) ?? ''
+    case 'check': return moment.due ? `${lowerFirst(moment.what)} now` : `${lowerFirst(moment.what)} at ${roughTime(moment.at, clock, 'down')}`
+  }
+}
+
+/** Why hands must start so early: "the window shuts at 15:05", or null. */
+export function momentReason(moment: NextMoment, clock: Clock): string | null {
+  if (moment.kind !== 'start by' || moment.shutsAt === null) return null
+  const time = roughTime(moment.shutsAt, clock, 'down')
+  return moment.shutsAt <= clock.now ? `the window shut at ${time}` : `the window shuts at ${time}`
+}
+
+const notWaiting: Record<StepStatus, string> = {
+  'waiting': 'waits', 'doing': 'being done', 'resting': 'resting', 'done': 'done', 'set aside': 'set aside', 'left out': 'left out',
+}
+const doubts: Record<DoubtCause, string> = {
+  chilled: 'chilled while wet: test or strip before anything else',
+  failed: 'a test failed: test or strip before anything else',
+  unknown: 'something went wrong: test or strip before anything else',
+}
+const holds: Record<Hold, string> = { clamps: 'in clamps', press: 'in the press', weight: 'under weight' }
+const kinds: Record<StepKind, string> = {
+  'coat': 'coats', 'glue-up': 'glue-ups', 'light sanding': 'light sanding', 'flat sanding': 'flat sanding',
+  'levelling': 'levelling', 'turn over': 'turning over', 'bench work': 'bench work', 'packing': 'packing',
+}
+
+/** Why a step may or may not begin. */
+export function beginReason(reason: BeginReason): string {
+  switch (reason.code) {
+    case 'may begin': return 'may begin'
+    case 'not waiting': return notWaiting[reason.status]
+    case 'doubt': return doubts[reason.cause]
+    case 'waits for': return `waits for ${lowerFirst(reason.step)}`
+    case 'held': return `${lowerFirst(reason.step)} is still ${holds[reason.hold]}`
+    case 'unknown film': return `nobody knows when ${lowerFirst(reason.step)} is dry: only after a touch test`
+    case 'no promise': return reason.reason ? `${predictionReason(reason.reason)}: only after a touch test` : 'only after a touch test'
+    case 'drying': return `waits until ${lowerFirst(reason.step)} is ${milestoneText(reason.milestone)}`
+    case 'window to come': return `the window after ${lowerFirst(reason.step)} is not open yet`
+    case 'window shut': return `the window after ${lowerFirst(reason.step)} has shut`
+    case 'keep out': return `keep out of ${reason.room}`
+    case 'role': return `${kinds[reason.kind]}: for those the owner allows`
+  }
+}
+
+const states: Record<StepState, string> = {
+  'waits for': 'waits', 'may begin': 'may begin', 'being done': 'being done', 'drying': 'drying', 'clamped': 'clamped', 'pressed': 'pressed',
+  'weighted': 'under weight', 'done': 'done', 'late': 'late', 'set aside': 'set aside', 'left out': 'left out', 'doubtful': 'doubtful',
+}
+
+/** Where a step stands in its life. `because` fills in what it waits for or why it was set aside: "waits until gesso is dry to sand lightly". */
+export function stepStateText(state: StepState, because: BeginReason | null = null, asideReason: string | null = null): string {
+  if (state === 'waits for' && because) return beginReason(because)
+  if (state === 'set aside' && asideReason) return `set aside: ${asideReason}`
+  if (state === 'late' && because?.code === 'window shut') return `late: ${beginReason(because)}`
+  return states[state]
+}

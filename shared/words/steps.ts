@@ -1,0 +1,139 @@
+import type { ActKind, Hold, MilestoneName, StepKind } from '#shared/terms'
+
+/** A name in the middle of a line: "Second varnish" as "second varnish", but "PVA on the spine" as it is. */
+export function lowerFirst(name: string): string {
+  const second = name.charAt(1)
+  const shouted = second !== second.toLowerCase()
+  return shouted ? name : name.charAt(0).toLowerCase() + name.slice(1)
+}
+
+const acts: Partial<Record<StepKind, string>> = { 'light sanding': 'sand lightly', 'flat sanding': 'sand flat', 'levelling': 'level', 'turn over': 'turn over' }
+
+/** What hands do in a step: "sand lightly"; for coats, glue-ups and bench work the step's own name: "second varnish". */
+export function stepAct(kind: StepKind, name: string): string {
+  return acts[kind] ?? lowerFirst(name)
+}
+
+const nouns: Partial<Record<StepKind, string>> = { 'light sanding': 'light sanding', 'flat sanding': 'flat sanding', 'levelling': 'levelling', 'turn over': 'turning over' }
+
+/** A step as a thing to start: "light sanding", "second varnish". */
+export function stepNoun(kind: StepKind, name: string): string {
+  return nouns[kind] ?? lowerFirst(name)
+}
+
+const milestones: Record<MilestoneName, string> = {
+  'set-to-touch': 'set to touch', 'dust-free': 'dust-free', 'tack-free': 'tack-free', 'at-tack': 'at tack', 'dry-to-handle': 'dry to handle',
+  'dry-to-sand-lightly': 'dry to sand lightly', 'dry-to-sand-flat': 'dry to sand flat', 'ready-to-recoat': 'ready to recoat',
+  'out-of-clamps': 'out of clamps', 'full-strength': 'full strength', 'cured': 'cured',
+}
+
+/** A milestone as the trade says it. */
+export function milestoneText(name: MilestoneName): string {
+  return milestones[name]
+}
+
+/** The key that says the common fact about a step: what a thumb presses when it is done. */
+export const doneKeys: Record<StepKind, string> = {
+  'coat': 'Coat is on',
+  'glue-up': 'Glue-up is on',
+  'light sanding': 'Sanded',
+  'flat sanding': 'Sanded flat',
+  'levelling': 'Levelled',
+  'turn over': 'Turned over',
+  'bench work': 'Done',
+  'packing': 'Packed',
+}
+
+/** Keys of the other acts. */
+export const actKeys = {
+  tacky: 'Still tacky',
+  tested: 'I tested it: dry enough',
+  out: 'It is out',
+  leaveIn: 'Leave it in',
+  notYet: 'Not on yet',
+  began: 'I am starting',
+  moved: 'I moved it',
+  notThere: 'Not there',
+  seen: 'It is here',
+  stripped: 'Stripped',
+  checkDone: 'Check done',
+  enough: 'That is enough',
+  setAside: 'Set aside',
+  resume: 'Take up again',
+  leaveOut: 'Leave out',
+  dropOut: 'A run: goes its own way',
+  rejoin: 'Back with the others',
+  putOn: 'I put something on',
+  warmAir: 'Warm air',
+  sun: 'In the sun',
+  shade: 'In the shade',
+  gone: 'Gone out',
+  correct: 'Correct this',
+  takeBack: 'Take back',
+} as const
+
+/** Keys that say when. Minutes before now; null asks for a time. */
+export const timeKeys: readonly { label: string, minutesAgo: number | null }[] = [
+  { label: 'now', minutesAgo: 0 }, { label: '10 min ago', minutesAgo: 10 }, { label: '20 min ago', minutesAgo: 20 },
+  { label: '30 min ago', minutesAgo: 30 }, { label: '60 min ago', minutesAgo: 60 }, { label: 'other', minutesAgo: null },
+]
+
+/** What an act was about, as far as its kind has it. All are shown as given. */
+export interface ActDetail {
+  step?: string | null
+  material?: string | null
+  milestone?: MilestoneName | null
+  reached?: boolean | null
+  hold?: Hold | null
+  place?: string | null
+  reason?: string | null
+  air?: 'sun' | 'shade' | 'warm air' | 'moving' | 'covered' | null
+  answer?: string | null
+}
+
+const outOf: Record<Hold, string> = { clamps: 'out of the clamps', press: 'out of the press', weight: 'out from under the weight' }
+const airs = { 'sun': 'in the sun', 'shade': 'in the shade', 'warm air': 'warm air on it', 'moving': 'air moving over it', 'covered': 'covered' }
+
+const named = (fact: string, name: string | null | undefined) => name ? `${fact}: ${lowerFirst(name)}` : fact
+
+function testText({ milestone, reached }: ActDetail): string {
+  const rung = milestone ? milestoneText(milestone) : 'dry enough'
+  return reached ? `tested: ${rung}` : `tested: not yet ${rung}`
+}
+
+const history: Record<ActKind, (detail: ActDetail) => string> = {
+  'batch started': () => 'batch started',
+  'began': ({ step }) => named('began', step),
+  'coat on': ({ step, material }) => named('coat on', step ?? material),
+  'glue-up on': ({ step, material }) => named('glue-up on', step ?? material),
+  'not on yet': ({ step }) => named('not on yet', step),
+  'it is out': ({ hold }) => hold ? outOf[hold] : 'it is out',
+  'work done': ({ step }) => named('done', step),
+  'turned over': () => 'turned over',
+  'check done': ({ step }) => named('check done', step),
+  'touch test': testText,
+  'stripped': ({ material }) => named('stripped', material),
+  'moved': ({ place }) => place ? `moved to ${place}` : 'moved',
+  'not there': ({ place }) => place ? `not there: ${place}` : 'not there',
+  'seen': ({ place }) => place ? `seen at ${place}` : 'seen',
+  'set aside': ({ reason }) => reason ? `set aside: ${reason}` : 'set aside',
+  'resumed': ({ step }) => named('taken up again', step),
+  'left out': ({ step }) => named('left out', step),
+  'dropped out': ({ reason }) => reason ? `goes its own way: ${reason}` : 'goes its own way',
+  'rejoined': () => 'back with the others',
+  'enough': ({ step }) => named('enough', step),
+  'window missed': ({ step }) => named('window missed', step),
+  'air': ({ air }) => air ? airs[air] : 'air noted',
+  'intake answered': ({ answer }) => answer ? `intake answered: ${answer}` : 'intake answered',
+  'room opened': ({ place }) => place ? `opened ${place}` : 'room opened',
+  'rags answered': ({ answer }) => answer ? `rags: ${answer}` : 'rags answered',
+  'gone': () => 'gone out',
+}
+
+/** Beside an act that was taken back again. */
+export const takenBack = 'taken back'
+
+/** What somebody did, for the history of a piece: "coat on: second varnish", "tested: not yet dry to handle". */
+export function actText(kind: ActKind, detail: ActDetail = {}): string {
+  return history[kind](detail)
+}

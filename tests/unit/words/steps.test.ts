@@ -1,0 +1,90 @@
+import { describe, expect, it } from 'vitest'
+import { actKinds, doubtCauses, holds, milestoneNames, stepKinds, stepStatuses } from '#shared/terms'
+import { studioZone } from '#shared/time'
+import { stepStates } from '#shared/verdict/begin'
+import { beginReason, momentReason, momentText, stepStateText } from '#shared/words/moments'
+import { actKeys, actText, doneKeys, lowerFirst, milestoneText, stepAct, stepNoun, takenBack, timeKeys } from '#shared/words/steps'
+import type { BeginReason } from '#shared/verdict/begin'
+import type { NextMoment } from '#shared/verdict/next'
+import { hour, minute } from '../verdict/facts'
+
+const zone = studioZone('UTC')
+const clock = { now: hour(13.5), zone }
+const start = (some: number, all: number, at = hour(14) + 35 * minute): NextMoment => ({ kind: 'start by', at, what: 'Second varnish', stepKind: 'coat', shutsAt: hour(15) + 5 * minute, pieces: { some, all } })
+
+describe('next moments in words', () => {
+  it('says the last moment to start, and the window only as its reason', () => {
+    expect(momentText(start(2, 2), clock)).toBe('start second varnish by 14:35 to do both')
+    expect(momentText(start(12, 12), clock)).toBe('start second varnish by 14:35 to do all 12')
+    expect(momentText(start(4, 12), clock)).toBe('start second varnish by 14:35 to do the first 4 of 12')
+    expect(momentText(start(1, 1), clock)).toBe('start second varnish by 14:35')
+    expect(momentText(start(2, 2), { ...clock, now: hour(15) })).toBe('late: second varnish was to start by 14:35 to do both')
+    expect(momentReason(start(2, 2), clock)).toBe('the window shuts at 15:05')
+    expect(momentReason(start(2, 2), { ...clock, now: hour(16) })).toBe('the window shut at 15:05')
+  })
+
+  it('says what may begin, now or from when', () => {
+    const sanding = { kind: 'may begin' as const, at: hour(13) + 55 * minute, what: 'Sanding', stepKind: 'light sanding' as const }
+    expect(momentText({ ...sanding, open: false }, clock)).toBe('sand lightly from 13:55')
+    expect(momentText({ ...sanding, open: true }, clock)).toBe('sand lightly')
+    expect(momentReason({ ...sanding, open: true }, clock)).toBeNull()
+  })
+
+  it('says what the verdict gets better to, and checks', () => {
+    expect(momentText({ kind: 'better', at: hour(14), what: 'hold by', grip: 'back' }, clock)).toBe('hold by the back from 14:00')
+    expect(momentText({ kind: 'check', at: hour(14), what: 'Change the blotters', due: false }, clock)).toBe('change the blotters at 14:00')
+    expect(momentText({ kind: 'check', at: hour(12), what: 'Change the blotters', due: true }, clock)).toBe('change the blotters now')
+  })
+})
+
+const step = 'Gesso'
+const reasons: BeginReason[] = [
+  { code: 'may begin' }, { code: 'waits for', step }, { code: 'unknown film', step }, { code: 'window to come', step }, { code: 'window shut', step }, { code: 'keep out', room: 'Spray room' },
+  { code: 'no promise', step, reason: null }, { code: 'no promise', step, reason: 'too-damp' },
+  ...stepStatuses.map(status => ({ code: 'not waiting' as const, status })), ...doubtCauses.map(cause => ({ code: 'doubt' as const, cause })),
+  ...holds.map(hold => ({ code: 'held' as const, step, hold })), ...milestoneNames.map(milestone => ({ code: 'drying' as const, step, milestone })),
+  ...stepKinds.map(kind => ({ code: 'role' as const, kind })),
+]
+
+describe('steps in words', () => {
+  it('says what a step waits for', () => {
+    expect(beginReason({ code: 'drying', step, milestone: 'dry-to-sand-lightly' })).toBe('waits until gesso is dry to sand lightly')
+    expect(beginReason({ code: 'no promise', step, reason: 'too-damp' })).toBe('too damp to promise: only after a touch test')
+    expect(stepStateText('waits for', { code: 'waits for', step })).toBe('waits for gesso')
+    expect(stepStateText('set aside', null, 'cracked')).toBe('set aside: cracked')
+    expect(stepStateText('late', { code: 'window shut', step })).toBe('late: the window after gesso has shut')
+    expect(stepStateText('late', { code: 'may begin' })).toBe('late')
+  })
+
+  it('keeps a name that is shouted', () => {
+    expect([lowerFirst('PVA on the spine'), lowerFirst('Second varnish'), lowerFirst('')]).toEqual(['PVA on the spine', 'second varnish', ''])
+    expect([stepAct('light sanding', 'x'), stepNoun('light sanding', 'x'), stepAct('coat', 'Gesso'), stepNoun('bench work', 'Sewing')]).toEqual(['sand lightly', 'light sanding', 'gesso', 'sewing'])
+  })
+
+  it('tells what was done', () => {
+    expect(actText('coat on', { step: 'Second varnish' })).toBe('coat on: second varnish')
+    expect(actText('coat on', { material: 'Casein paint' })).toBe('coat on: casein paint')
+    expect(actText('touch test', { milestone: 'dry-to-handle', reached: false })).toBe('tested: not yet dry to handle')
+    expect(actText('touch test', { reached: true })).toBe('tested: dry enough')
+    expect(actText('it is out', { hold: 'clamps' })).toBe('out of the clamps')
+    expect(actText('moved', { place: 'Shelf B' })).toBe('moved to Shelf B')
+    expect(actText('air', { air: 'warm air' })).toBe('warm air on it')
+  })
+
+  it('has words for everything and grants nothing', () => {
+    const said = [
+      ...reasons.map(beginReason), ...stepStates.map(state => stepStateText(state)), ...milestoneNames.map(milestoneText), takenBack,
+      ...actKinds.map(kind => actText(kind)), ...actKinds.map(kind => actText(kind, { step, place: 'Shelf B', reason: 'a run', answer: 'none', hold: 'press', air: 'sun' })),
+      ...Object.values(doneKeys), ...Object.values(actKeys), ...timeKeys.map(key => key.label),
+    ]
+    for (const text of said) {
+      expect(text).toMatch(/^[^\s].*[^\s.!]$/)
+      expect(text).not.toMatch(/safe|!|\bnull\b|undefined|NaN/i)
+    }
+  })
+
+  it('offers a key for now and for another time', () => {
+    expect(timeKeys.map(key => key.minutesAgo)).toEqual([0, 10, 20, 30, 60, null])
+    expect(new Set(Object.values(actKeys)).size).toBe(Object.values(actKeys).length)
+  })
+})
