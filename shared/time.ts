@@ -165,3 +165,45 @@ export function ago(at: number, now: number): string {
   const days = Math.floor(minutes / 1440)
   return days === 1 ? '1 day ago' : `${days} days ago`
 }
+
+/** A wall clock in figures: `month` 1..12, `weekday` 1 (Monday)..7, `minute` of the day 0..1439. */
+export interface Wall { year: number, month: number, day: number, weekday: number, minute: number }
+
+/** A day may overflow (`day: 32`, `minute: 1500`): the calendar carries it over. */
+export type WallDay = Pick<Wall, 'year' | 'month' | 'day' | 'minute'>
+
+export interface WallClock {
+  /** Wall time of an instant (ms UTC). */
+  wallAt: (at: number) => Wall
+  /** The first instant that shows this wall time; one the spring change skips is read as so much later. */
+  instantAt: (wall: WallDay) => number
+}
+
+/**
+ * The clock on the wall of a studio, in figures.
+ * @param name IANA name of its zone; an unknown one throws RangeError
+ */
+export function wallClock(name: string): WallClock {
+  const zone = studioZone(name)
+  return {
+    wallAt: (at) => {
+      const { date, minutes, weekday } = zone.wall(at)
+      const [year = 0, month = 0, day = 0] = date.split('-').map(Number)
+      return { year, month, day, weekday, minute: minutes }
+    },
+    instantAt: ({ year, month, day, minute }) => fromLocal(new Date(Date.UTC(year, month - 1, day)).toISOString().slice(0, 10), minute, zone),
+  }
+}
+
+/** A wall minute with two figures of hours, as a time field wants it: 545 is "09:05". */
+export function clockWords(minuteOfDay: number): string {
+  return clockFace(minuteOfDay).padStart(5, '0')
+}
+
+/** When something was done, as the time keys say it: minutes before the press of the act's key, or an instant (ms UTC). */
+export type TimeAnswer = { kind: 'ago', minutes: number } | { kind: 'at', at: number }
+
+/** The instant a time answer means when the act's key is pressed at `now` (both ms UTC). */
+export function answeredAt(answer: TimeAnswer, now: number): number {
+  return answer.kind === 'at' ? answer.at : now - answer.minutes * minuteMs
+}
