@@ -129,5 +129,5 @@ export interface StudioState {
   places: PlaceState[]
   pieces: PieceState[]
   sessions: SessionState[]
-  rags: { roomId: number, room: string, sinceAt: number }[]
+  rags: { id: number, roomId: number, room: string, sinceAt: number }[]
 }

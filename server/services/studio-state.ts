@@ -1,0 +1,55 @@
+import { asc, eq, isNull, sql } from 'drizzle-orm'
+import { closure, openHours, plan, planSession, ragDuty, room } from '~~/db/schema'
+import { pieceStates } from '~~/server/services/piece-states'
+import { placeStates, roomStates } from '~~/server/services/room-states'
+import type { StudioRow } from '~~/server/services/sessions'
+import type { Database } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { openSpans } from '#shared/open-hours'
+import type { PieceState, SessionState, StudioState } from '#shared/schemas/piece-state'
+import { addDays, fromLocal, localDate, startOfLocalDay, studioZone } from '#shared/time'
+
+/**
+ * The studio as it stands at `now` (ms UTC): what every screen is drawn from. A number of queries that does not grow
+ * with the number of pieces, each on an index.
+ */
+export function studioState(db: Database, owner: StudioRow, now: number): StudioState {
+  const pieces = pieceStates(db, owner.id, null)
+  return {
+    at: now, revision: owner.revision,
+    studio: { id: owner.id, name: owner.name, zone: owner.zone, units: owner.units },
+    hours: hoursToday(db, owner, now),
+    rooms: roomStates(db, owner.id, now),
+    places: placeStates(db, owner.id),
+    pieces,
+    sessions: sessionStates(db, owner.id, pieces),
+    rags: db.select({ id: ragDuty.id, roomId: ragDuty.roomId, room: room.name, sinceAt: ragDuty.lastOilAt }).from(ragDuty).innerJoin(room, eq(room.id, ragDuty.roomId))
+      .where(scoped(ragDuty, owner.id, isNull(ragDuty.answeredAt))).all(),
+  }
+}
+
+function hoursToday(db: Database, owner: StudioRow, now: number) {
+  const zone = studioZone(owner.zone)
+  const open = db.select().from(openHours).where(scoped(openHours, owner.id, isNull(openHours.memberId))).all()
+  const closed = db.select().from(closure).where(scoped(closure, owner.id, isNull(closure.memberId))).all()
+  const dayEnd = fromLocal(addDays(localDate(now, zone), 1), 0, zone)
+  return openSpans({ open, closed }, zone, startOfLocalDay(now, zone), dayEnd).map(span => ({ opensAt: span.fromAt, closesAt: span.toAt }))
+}
+
+/** The sessions of the plan in force that still have something waiting, by the turns that pieces show. */
+function sessionStates(db: Database, studioId: number, pieces: readonly PieceState[]): SessionState[] {
+  const rows = db.select({ session: planSession }).from(plan).innerJoin(planSession, eq(planSession.planId, plan.id))
+    .where(scoped(plan, studioId, sql`${plan.current} = 1`)).orderBy(asc(planSession.startsAt)).all().map(row => row.session)
+  const turns = new Map<number, { turnId: number, pieceId: number, lastStartAt: number | null, firstFew: number | null, lastStartFewAt: number | null }[]>()
+  for (const piece of pieces) {
+    for (const turn of piece.turns) {
+      if (!turn.plan || turn.plan.sessionId === null) continue
+      turns.set(turn.plan.sessionId, [...turns.get(turn.plan.sessionId) ?? [], { turnId: turn.turnId, pieceId: piece.id, lastStartAt: turn.plan.lastStartAt, firstFew: turn.plan.firstFew, lastStartFewAt: turn.plan.lastStartFewAt }])
+    }
+  }
+  return rows.flatMap((row) => {
+    const members = turns.get(row.id) ?? []
+    const first = members[0]
+    return first ? [{ id: row.id, family: row.family, startsAt: row.startsAt, endsAt: row.endsAt, lastStartAt: first.lastStartAt, firstFew: first.firstFew, lastStartFewAt: first.lastStartFewAt, turnIds: members.map(each => each.turnId), pieceIds: members.map(each => each.pieceId) }] : []
+  })
+}

@@ -1,0 +1,21 @@
+import * as z from 'zod/mini'
+import { clientKey, instant } from '#shared/schemas/act'
+import { fields } from '#shared/words/batch'
+
+const id = z.int().check(z.positive())
+const name = (wanted: string) => z.string().check(z.trim(), z.minLength(1, wanted), z.maxLength(60, wanted))
+
+/** What a batch is started with. Without a schedule its pieces take whatever is put on them. */
+export const batchRequest = z.object({
+  clientKey,
+  name: name(fields.batchName),
+  scheduleId: z.nullable(id),
+  /** One name for each piece, in the order of the row. */
+  pieces: z.array(name(fields.pieceName)).check(z.minLength(1, fields.pieces), z.maxLength(60, fields.pieces)),
+  sizeUnits: z._default(z.int().check(z.gte(1, fields.size), z.lte(20, fields.size)), 1),
+  placeId: id,
+  order: z.nullable(z.object({ name: name(fields.orderName), dueAt: z.nullable(instant) })),
+  startsAt: instant,
+  oldObject: z._default(z.boolean(), false),
+})
+export type BatchRequest = z.infer<typeof batchRequest>

@@ -1,0 +1,20 @@
+/** What a field of a new batch wants, said when it did not get it. */
+export const fields = {
+  batchName: 'Give the batch a name of 1 to 60 characters.',
+  pieceName: 'Give every piece a name of 1 to 60 characters.',
+  pieces: 'A batch has 1 to 60 pieces.',
+  size: 'A piece takes 1 to 20 size units of a shelf.',
+  orderName: 'Give the order a name of 1 to 60 characters.',
+} as const
+
+export const batchRefusals = {
+  noSchedule: 'Choose one of the studio’s finishing schedules.',
+  noPlace: 'Choose a place for the pieces.',
+  full: (place: string, free: number, wanted: number) => `${place} has room for ${free}; the batch needs ${wanted}. Choose another place or fewer pieces.`,
+  sleptIn: (room: string) => `Somebody sleeps in ${room}. Work with solvents does not begin there.`,
+  startTooOld: 'A batch begins at most 14 days back and 90 days ahead.',
+  sameNames: 'Two pieces have the same name. Give each its own.',
+} as const
+
+/** The one part of a piece that has no parts. */
+export const wholePart = { key: 'whole', name: 'whole' } as const
