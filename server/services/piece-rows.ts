@@ -60,7 +60,9 @@ function readSteps(db: Reader, studioId: number, only: number[] | null) {
   const entries = db.select({ entry: planEntry }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).innerJoin(turn, eq(turn.id, planEntry.turnId))
     .where(scoped(plan, studioId, sql`${plan.current} = 1`, only ? inArray(planEntry.turnId, turns.map(each => each.id)) : undefined)).all().map(row => row.entry)
   const targets = db.selectDistinct({ stepId: stepTarget.stepId, partId: stepTarget.partId }).from(pieceStep).innerJoin(stepTarget, eq(stepTarget.stepId, pieceStep.id)).where(front).all()
-  return { steps, turns, targets, links, before: readBefore(db, studioId, links.map(link => link.fromStepId)), entries }
+  const sizes = db.select({ sessionId: planEntry.sessionId, size: sql<number>`count(*)` }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id))
+    .where(scoped(plan, studioId, sql`${plan.current} = 1`)).groupBy(planEntry.sessionId).all()
+  return { steps, turns, targets, sizes, links, before: readBefore(db, studioId, links.map(link => link.fromStepId)), entries }
 }
 
 /** The steps that the front waits for: their names, and whether they are done. */

@@ -90,7 +90,8 @@ function groupsOf(parts: readonly PartRow[], films: readonly FilmState[]): Group
 interface PieceTurn { pieceId: number, state: TurnState }
 
 function turnStates(rows: PieceRows, films: readonly PieceFilm[], names: ReadonlyMap<number, string>): PieceTurn[] {
-  const { steps, turns, targets, links, before, entries } = rows.steps
+  const { steps, turns, targets, sizes, links, before, entries } = rows.steps
+  const sizeOf = new Map(sizes.map(row => [row.sessionId, row.size]))
   const targetsOf = by(targets, row => row.stepId)
   const turnsOf = by(turns, row => row.stepId)
   const linksTo = by(links, row => row.toStepId)
@@ -99,15 +100,21 @@ function turnStates(rows: PieceRows, films: readonly PieceFilm[], names: Readonl
   const filmsOfStep = by(films, film => film.stepId)
   return steps.flatMap((row): PieceTurn[] => {
     const all = turnsOf.get(row.step.id) ?? []
+    const own = newest(filmsOfStep.get(row.step.id))
     const waits = (linksTo.get(row.step.id) ?? []).map((link): WaitState => {
       const from = beforeById.get(link.fromStepId)
       return waitOf(from?.name ?? '', from?.status ?? 'done', link, newest(filmsOfStep.get(link.fromStepId)))
     })
-    return nextTurns(all).map(turn => ({ pieceId: row.step.pieceId, state: turnState(row, turn, all, [...waits, ...ownWaits(row, turn, all, newest(filmsOfStep.get(row.step.id)))], newest(filmsOfStep.get(row.step.id)), entryOf.get(turn.id) ?? null, names, (targetsOf.get(row.step.id) ?? []).map(each => each.partId)) }))
+    const partIds = (targetsOf.get(row.step.id) ?? []).map(each => each.partId)
+    return nextTurns(all).map(turn => ({
+      pieceId: row.step.pieceId,
+      state: turnState({ row, turn, all, waits: [...waits, ...ownWaits(row, turn, all, own)], film: own[0] ?? null, entry: entryOf.get(turn.id) ?? null, size: sizeOf.get(entryOf.get(turn.id)?.sessionId ?? null) ?? 1, partIds }, names),
+    }))
   })
 }
 
-const newest = (films: readonly PieceFilm[] | undefined): FilmState | null => films?.[films.length - 1]?.state ?? null
+/** The last film of a step: earlier coats of its round lie beneath it. */
+const newest = (films: readonly PieceFilm[] | undefined): FilmState[] => (films ?? []).slice(-1).map(film => film.state)
 
 /** Of each kind the one being done or the first that waits. A release waits for nothing but its time, so it shows beside a check. */
 function nextTurns(turns: readonly TurnRow[]): TurnRow[] {
@@ -117,10 +124,17 @@ function nextTurns(turns: readonly TurnRow[]): TurnRow[] {
   return [open.find(turn => turn.kind === 'check'), open.find(turn => turn.kind === 'release')].filter(turn => turn !== undefined)
 }
 
-function waitOf(what: string, status: StepRow['step']['status'], link: { milestone: WaitState['milestone'], risk: WaitState['risk'], windowed: boolean }, film: FilmState | null): WaitState {
-  const behind = status === 'done' || status === 'resting' || status === 'left out'
-  const rung = link.milestone === null || !film ? null : rungAt(film, link.milestone)
-  return { what, done: behind, milestone: link.milestone, risk: link.risk, film: rung, windows: link.windowed && film ? film.windows : [] }
+interface Asked { milestone: WaitState['milestone'], risk: WaitState['risk'], windowed: boolean }
+
+function waitOf(step: string, status: WaitState['status'], link: Asked, films: readonly FilmState[]): WaitState {
+  const asks = link.milestone === null ? [] : films
+  return {
+    step, status, milestone: link.milestone, risk: link.risk, windowed: link.windowed,
+    films: asks.map(film => ({
+      moment: link.milestone === null ? null : rungAt(film, link.milestone), hold: film.hold,
+      windows: film.windows.map(window => ({ ...window, fromStart: window.opensAt !== null && window.opensAt <= film.endedAt })),
+    })),
+  }
 }
 
 /** The rung asked for, or the next higher one where this material's ladder has not got it. */
@@ -130,13 +144,14 @@ function rungAt(film: FilmState, name: MilestoneName) {
 }
 
 /** The next coat of a round waits for the one before it, whatever the schedule's links say. */
-function ownWaits(row: StepRow, turn: TurnRow, all: readonly TurnRow[], film: FilmState | null): WaitState[] {
+function ownWaits(row: StepRow, turn: TurnRow, all: readonly TurnRow[], films: readonly FilmState[]): WaitState[] {
   const again = turn.kind === 'work' && all.some(each => each.kind === 'work' && each.status === 'done')
-  if (!again || !film) return []
-  return [waitOf(row.step.name, 'resting', { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }, film)]
+  return again ? [waitOf(row.step.name, 'resting', { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }, films)] : []
 }
 
-function turnState(row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, names: ReadonlyMap<number, string>, partIds: number[]): TurnState {
+interface TurnParts { row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, size: number, partIds: number[] }
+
+function turnState({ row, turn, all, waits, film, entry, size, partIds }: TurnParts, names: ReadonlyMap<number, string>): TurnState {
   const { step } = row
   const alike = all.filter(each => each.kind === turn.kind)
   return {
@@ -146,7 +161,7 @@ function turnState(row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: 
     doing: turn.status === 'doing' ? { by: names.get(turn.doingMemberId ?? 0) ?? '', sinceAt: turn.beganAt ?? 0 } : null,
     wantedAt: wantedAt(turn, film),
     waits,
-    plan: entry && { startsAt: entry.startsAt, endsAt: entry.endsAt, dueAt: entry.dueAt, memberId: entry.memberId, sessionId: entry.sessionId, lastStartAt: entry.lastStartAt, firstFew: entry.firstFew, lastStartFewAt: entry.lastStartFewAt, afterTest: entry.afterTest },
+    plan: entry && { startsAt: entry.startsAt, endsAt: entry.endsAt, dueAt: entry.dueAt, memberId: entry.memberId, sessionId: entry.sessionId, sessionSize: size, lastStartAt: entry.lastStartAt, firstFew: entry.firstFew, lastStartFewAt: entry.lastStartFewAt, afterTest: entry.afterTest },
   }
 }
 

@@ -44,15 +44,15 @@ export interface GroupState {
   films: FilmState[]
 }
 
-/** What a turn waits for: a step to be done, or a film to have come to a rung at a risk, inside a window if any. */
+/** A step before, and what is asked of its films: to have come to a rung at a risk, inside a window if the link says so. */
 export interface WaitState {
-  what: string
-  done: boolean
+  step: string
+  status: StepStatus
   milestone: MilestoneName | null
   risk: Risk
-  film: MilestonePrediction | null
-  /** Windows of that film; empty when none bind. */
-  windows: WindowPrediction[]
+  windowed: boolean
+  /** Those of its films that can still change the answer; none left counts as met. */
+  films: { moment: MilestonePrediction | null, windows: (WindowPrediction & { fromStart: boolean })[], hold: Hold | null }[]
 }
 
 export interface PlannedState {
@@ -61,6 +61,8 @@ export interface PlannedState {
   dueAt: number
   memberId: number | null
   sessionId: number | null
+  /** How many turns the session holds. */
+  sessionSize: number
   lastStartAt: number | null
   firstFew: number | null
   lastStartFewAt: number | null
