@@ -65,6 +65,9 @@ export type CallKind = typeof callKinds[number]
 export const channels = ['push', 'mail'] as const
 export type Channel = typeof channels[number]
 
+export const ragAnswers = ['flat outdoors', 'in water can', 'not dealt with'] as const
+export type RagAnswer = typeof ragAnswers[number]
+
 export const reminderStatuses = ['due', 'claimed', 'sent', 'answered', 'withdrawn'] as const
 export const deliveryStatuses = ['queued', 'sending', 'accepted', 'unknown', 'gone', 'failed'] as const
 export const planStatuses = ['optimal', 'feasible', 'infeasible'] as const

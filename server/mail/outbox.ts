@@ -1,5 +1,5 @@
 import { existsSync } from 'node:fs'
-import { mkdir, open, readdir, readFile, rename } from 'node:fs/promises'
+import { mkdir, open, readFile, rename } from 'node:fs/promises'
 import { join } from 'node:path'
 import { createTransport } from 'nodemailer'
 import { toNodemailer } from './message'
@@ -10,8 +10,10 @@ export interface OutboxEntry { name: string, to: string, subject: string, at: nu
 
 const builder = createTransport({ streamTransport: true, buffer: true, newline: 'windows' })
 
+const isName = (stableId: string) => /^[\w-]{1,64}$/.test(stableId)
+
 const fileOf = (folder: string, stableId: string) => {
-  if (!/^[\w-]{1,64}$/.test(stableId)) throw new Error('A mail in the outbox is named by letters, digits, _ and - only.')
+  if (!isName(stableId)) throw new Error('A mail in the outbox is named by letters, digits, _ and - only.')
   return join(folder, `${stableId}.eml`)
 }
 
@@ -62,13 +64,12 @@ function readBody(source: string) {
   return text.replaceAll('\r\n', '\n').trimEnd()
 }
 
-/** The newest mails in the outbox, newest first; none when nothing was ever written. */
-export async function listOutbox(folder: string, limit = 50): Promise<OutboxEntry[]> {
-  const names = existsSync(folder) ? (await readdir(folder)).filter(name => name.endsWith('.eml')) : []
-  const entries = await Promise.all(names.map(async (name): Promise<OutboxEntry> => {
-    const source = await readFile(join(folder, name), 'utf8')
+/** Those of the named mails that lie in the outbox, in the order of their names. Unreadable names are passed over. */
+export async function readOutbox(folder: string, stableIds: readonly string[]): Promise<OutboxEntry[]> {
+  const lying = stableIds.filter(stableId => isName(stableId) && existsSync(fileOf(folder, stableId)))
+  return Promise.all(lying.map(async (stableId): Promise<OutboxEntry> => {
+    const source = await readFile(fileOf(folder, stableId), 'utf8')
     const at = Date.parse(header(source, 'Date'))
-    return { name, to: plain(header(source, 'To')), subject: plain(header(source, 'Subject')), at: Number.isNaN(at) ? null : at, text: readBody(source) }
+    return { name: `${stableId}.eml`, to: plain(header(source, 'To')), subject: plain(header(source, 'Subject')), at: Number.isNaN(at) ? null : at, text: readBody(source) }
   }))
-  return entries.sort((a, b) => (b.at ?? 0) - (a.at ?? 0) || a.name.localeCompare(b.name)).slice(0, limit)
 }

@@ -4,6 +4,7 @@ import { releaseHolds } from '~~/server/reminders/claim'
 import { openChannels } from '~~/server/reminders/channels'
 import { tick } from '~~/server/reminders/tick'
 import { reconcileAll } from '~~/server/reminders/wanted'
+import { change } from '~~/server/utils/change'
 import { useConfig } from '~~/server/utils/config'
 import { useDatabase } from '~~/server/utils/database'
 import { whenReady } from '~~/server/utils/ready'
@@ -12,7 +13,9 @@ async function lookRound() {
   const db = useDatabase()
   const now = Date.now()
   reconcileAll(db, now)
-  await tick(db, now, openChannels(db, useConfig(), process.env))
+  const studios = await tick(db, now, openChannels(db, useConfig(), process.env))
+  // Open pages show the calls too.
+  for (const studioId of studios) change(db, studioId, 'calls', () => undefined)
 }
 
 async function begin() {

@@ -2,7 +2,7 @@ import { and, eq, inArray, isNull } from 'drizzle-orm'
 import type { cause } from '~~/db/schema'
 import { act, callChoice, member, person, ragDuty, subscription } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
-import type { CallKind, Channel } from '#shared/terms'
+import type { CallKind, Channel, Role } from '#shared/terms'
 import type { Audience } from './types'
 
 /** Where one sending goes: a browser's subscription (its row) or a member's mail (the member's row). */
@@ -17,8 +17,11 @@ export function audienceOf(kind: CallKind, repeat: number): Audience {
   return repeat === 0 ? 'makers and the one who did it' : 'everybody'
 }
 
-/** Whether a kind can be switched off by a member. */
+/** Whether a kind can be switched off by a member: fire calls cannot. */
 export const isSwitchable = (kind: CallKind) => kind !== 'rags'
+
+/** Whether a member of this role gets a kind while they have not chosen: a helper only fire calls. */
+export const isOnByDefault = (kind: CallKind, role: Role) => role !== 'helper' || !isSwitchable(kind)
 
 /** The endpoints a call goes to now: each member's browsers that still listen, and their mail. */
 export function endpointsFor(tx: Database | Transaction, studioId: number, call: { kind: CallKind, repeat: number, subjectId: number }): Endpoint[] {
@@ -42,8 +45,10 @@ function listeners(tx: Database | Transaction, studioId: number, call: { kind: C
   // Whoever did it may be unknown: a bench tablet records for the studio. Then everybody is asked at once.
   if (audience !== 'makers' && doer === null) return members
   const choices = isSwitchable(call.kind) ? choicesFor(tx, studioId, call.kind) : new Map<number, boolean>()
-  return members.filter(one => choices.get(one.memberId) ?? (one.role !== 'helper' || one.memberId === doer))
+  return members.filter(one => choices.get(one.memberId) ?? (one.memberId === doer || isMaker(one.role)))
 }
+
+const isMaker = (role: Role) => role !== 'helper'
 
 function choicesFor(tx: Database | Transaction, studioId: number, kind: CallKind) {
   const rows = tx.select().from(callChoice).where(and(eq(callChoice.studioId, studioId), eq(callChoice.kind, kind))).all()

@@ -2,6 +2,7 @@ import { and, eq, inArray, lte, or } from 'drizzle-orm'
 import { cause, delivery, reminder } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import type { CallKind } from '#shared/terms'
+import { callWords } from '#shared/words/calls'
 import { endpointsFor, stableWords } from './audience'
 import { deliverySeed, stableIdOf } from './stableId'
 
@@ -18,7 +19,7 @@ export const isUrgent = (kind: CallKind) => kind === 'rags' || kind === 'last mo
  * for urgent kinds and shown as unknown for the rest.
  * @returns the reminders now held, at most twenty
  */
-export function claimDue(db: Database, now: number): number[] {
+export function claimDue(db: Database, now: number): { id: number, studioId: number }[] {
   return db.transaction((tx) => {
     const seed = deliverySeed(tx)
     const rows = tx.select({ reminder, cause }).from(reminder).innerJoin(cause, eq(reminder.causeId, cause.id))
@@ -29,7 +30,7 @@ export function claimDue(db: Database, now: number): number[] {
       else resolveLeftovers(tx, row.reminder.id, row.cause.kind as CallKind, now)
       tx.update(reminder).set({ status: 'claimed', leaseUntil: now + leaseMs }).where(eq(reminder.id, row.reminder.id)).run()
     }
-    return rows.map(row => row.reminder.id)
+    return rows.map(({ reminder: { id, studioId } }) => ({ id, studioId }))
   }, { behavior: 'immediate' })
 }
 
@@ -48,7 +49,7 @@ function writeDeliveries(tx: Transaction, row: { reminder: typeof reminder.$infe
 function resolveLeftovers(tx: Transaction, reminderId: number, kind: CallKind, now: number) {
   const left = and(eq(delivery.reminderId, reminderId), eq(delivery.status, 'sending'))
   if (isUrgent(kind)) tx.update(delivery).set({ status: 'queued', nextTryAt: now, changedAt: now }).where(left).run()
-  else tx.update(delivery).set({ status: 'unknown', nextTryAt: null, changedAt: now, problem: 'The server stopped while sending: it may have arrived.' }).where(left).run()
+  else tx.update(delivery).set({ status: 'unknown', nextTryAt: null, changedAt: now, problem: callWords.delivery.stopped }).where(left).run()
 }
 
 /**
@@ -59,7 +60,7 @@ export function releaseHolds(db: Database, now: number): void {
   db.transaction((tx) => {
     tx.update(reminder).set({ leaseUntil: now }).where(eq(reminder.status, 'claimed')).run()
     const closed = tx.select({ id: reminder.id }).from(reminder).where(inArray(reminder.status, ['sent', 'answered', 'withdrawn']))
-    tx.update(delivery).set({ status: 'unknown', nextTryAt: null, changedAt: now, problem: 'The server stopped while sending: it may have arrived.' })
+    tx.update(delivery).set({ status: 'unknown', nextTryAt: null, changedAt: now, problem: callWords.delivery.stopped })
       .where(and(eq(delivery.status, 'sending'), inArray(delivery.reminderId, closed))).run()
   }, { behavior: 'immediate' })
 }

@@ -2,6 +2,7 @@ import { and, eq, lte, min, or, isNull } from 'drizzle-orm'
 import { cause, delivery, member, person, reminder, studio, subscription } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import type { CallKind } from '#shared/terms'
+import { callWords } from '#shared/words/calls'
 import { isUrgent } from './claim'
 import type { Channels, OutgoingCall, SendOutcome } from './types'
 
@@ -39,7 +40,7 @@ function beginSending(db: Database, deliveryId: number, now: number): OutgoingCa
     if (!row) return null
     const to = addressOf(tx, row.delivery)
     if (!to) {
-      tx.update(delivery).set({ status: 'gone', nextTryAt: null, changedAt: now, problem: 'Nobody listens there any more.' }).where(eq(delivery.id, deliveryId)).run()
+      tx.update(delivery).set({ status: 'gone', nextTryAt: null, changedAt: now, problem: callWords.delivery.nobodyThere }).where(eq(delivery.id, deliveryId)).run()
       return null
     }
     tx.update(delivery).set({ status: 'sending', tries: row.delivery.tries + 1, nextTryAt: null, changedAt: now }).where(eq(delivery.id, deliveryId)).run()

@@ -1,6 +1,7 @@
 import { and, eq, inArray, sql } from 'drizzle-orm'
 import { cause, coat, delivery, ragDuty, reminder } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
+import { callWords } from '#shared/words/calls'
 import type { WantedReminder } from './types'
 
 /** What reconciling changed, for the log and for tests. */
@@ -77,7 +78,7 @@ function close(tx: Transaction, standing: Standing, done: Reconciled) {
   const answer = answerTo(tx, standing.cause)
   tx.update(reminder).set({ status: answer ? 'answered' : 'withdrawn', answeredActId: answer?.actId ?? null, leaseUntil: null })
     .where(eq(reminder.id, standing.reminder.id)).run()
-  tx.update(delivery).set({ status: 'failed', nextTryAt: null, problem: 'It was no longer needed before it could be sent.' })
+  tx.update(delivery).set({ status: 'failed', nextTryAt: null, problem: callWords.delivery.notNeeded })
     .where(and(eq(delivery.reminderId, standing.reminder.id), eq(delivery.status, 'queued'))).run()
   done[answer ? 'answered' : 'withdrawn'] += 1
 }

@@ -6,14 +6,14 @@ import type { Channels } from './types'
 /**
  * Makes every call that is due at `now` (ms UTC), also those that fell due while the server was down. Transactions
  * are short; nothing is sent inside one. May run twice at a time: a call is held by one runner.
- * @returns how many calls were taken in hand
+ * @returns the studios in which something was taken in hand
  */
-export async function tick(db: Database, now: number, channels: Channels): Promise<number> {
-  let taken = 0
+export async function tick(db: Database, now: number, channels: Channels): Promise<number[]> {
+  const studios = new Set<number>()
   for (;;) {
     const held = claimDue(db, now)
-    if (held.length === 0) return taken
-    taken += held.length
-    await Promise.all(held.map(id => deliverReminder(db, id, now, channels)))
+    if (held.length === 0) return [...studios]
+    for (const { studioId } of held) studios.add(studioId)
+    await Promise.all(held.map(({ id }) => deliverReminder(db, id, now, channels)))
   }
 }

@@ -39,7 +39,14 @@ export const callWords = {
   rags: {
     title: 'Where are the oily rags?',
     body: (room: string, last: string) => `${room}, last oil at ${last}. Rags, pads, towels, steel wool and sanding dust can catch fire by themselves hours later. Flat outdoors in one layer, or in the water can? We ask again until somebody answers. Follow the product's safety data sheet and your local rules.`,
+    sayWhere: 'Say where the rags are: flat outdoors, in the water can, or not dealt with.',
+    answeredAlready: 'Somebody has answered for these rags already.',
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
+  },
+  delivery: {
+    notNeeded: 'It was no longer needed before it could be sent.',
+    nobodyThere: 'Nobody listens there any more.',
+    stopped: 'The server stopped while sending: it may have arrived.',
   },
   mail: {
     subject: (title: string, studio: string) => `${title} (${studio})`,

@@ -34,4 +34,8 @@ export const fields = {
   capacity: 'The capacity is a whole number of size units, from 1 to 9999.',
   callKind: 'There is no call of that kind.',
   wanted: 'Say whether the call is wanted: yes or no.',
+  pushEndpoint: 'The push address is the https address your browser was given.',
+  pushKeys: 'The two keys are those your browser made for this subscription.',
+  device: 'A name for the device has at most 80 characters.',
+  ragAnswer: 'Say where the rags are: flat outdoors, in water can, or not dealt with.',
 } as const

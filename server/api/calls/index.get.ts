@@ -4,5 +4,5 @@ import { listCallChoices } from '~~/server/services/calls'
 /** GET /api/calls: which calls I get. */
 export default defineStudioHandler({
   may: 'choose own calls',
-  run: ({ db, studio, member }) => listCallChoices(db, studio.id, member.id),
+  run: ({ db, studio, member }) => listCallChoices(db, studio.id, member),
 })

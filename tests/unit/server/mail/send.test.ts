@@ -2,7 +2,7 @@ import { existsSync, mkdtempSync, readdirSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
-import { listOutbox } from '~~/server/mail/outbox'
+import { readOutbox } from '~~/server/mail/outbox'
 import { sendMail } from '~~/server/mail/send'
 import { mailService, refusal } from '../../../helpers/mailReceiver'
 
@@ -55,14 +55,14 @@ describe('mail without a mail server', () => {
     expect(await sendMail(message, settings)).toEqual({ kind: 'accepted' })
     expect(await sendMail(message, settings)).toEqual({ kind: 'accepted' })
     expect(readdirSync(folder)).toEqual(['AbC_-123.eml'])
-    expect(await listOutbox(folder)).toEqual([{ name: 'AbC_-123.eml', to: 'Zoë <zoe@example.test>', subject: message.subject, at: message.at, text: message.text }])
+    expect(await readOutbox(folder, [message.stableId])).toEqual([{ name: 'AbC_-123.eml', to: 'Zoë <zoe@example.test>', subject: message.subject, at: message.at, text: message.text }])
   })
 
-  it('lists the newest first, and nothing before the first mail', async () => {
-    expect(await listOutbox(folder)).toEqual([])
-    await sendMail({ ...message, stableId: 'older' }, { smtp: null, outboxFolder: folder })
-    await sendMail({ ...message, stableId: 'newer', at: message.at + 60_000 }, { smtp: null, outboxFolder: folder })
-    expect((await listOutbox(folder, 1)).map(mail => mail.name)).toEqual(['newer.eml'])
+  it('shows the mails asked for, and nothing else that lies there', async () => {
+    expect(await readOutbox(folder, [message.stableId])).toEqual([])
+    await sendMail({ ...message, stableId: 'of-another-studio' }, { smtp: null, outboxFolder: folder })
+    await sendMail(message, { smtp: null, outboxFolder: folder })
+    expect((await readOutbox(folder, ['missing', '../outside', message.stableId])).map(mail => mail.name)).toEqual(['AbC_-123.eml'])
   })
 
   it('stays queued when the folder cannot be written', async () => {
