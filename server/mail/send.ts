@@ -4,6 +4,7 @@ import type { SmtpConfig } from '~~/server/utils/config'
 import { toNodemailer } from './message'
 import type { MailMessage } from './message'
 import { putInOutbox } from './outbox'
+import { callWords } from '#shared/words/calls'
 
 /** Where mail goes: to a mail server, or into a folder while none is set. */
 export interface MailSettings { smtp: SmtpConfig | null, outboxFolder: string }
@@ -17,11 +18,11 @@ function field(error: unknown, name: 'code' | 'command' | 'responseCode') {
 /** What a failed SMTP exchange means: the server's own word first, then how far the exchange had come. */
 function outcomeOf(error: unknown): SendOutcome {
   const answer = field(error, 'responseCode')
-  if (typeof answer === 'number' && answer >= 500) return { kind: 'failed', problem: `The mail server answered ${answer}.` }
-  if (typeof answer === 'number' && answer >= 400) return { kind: 'unreachable', problem: `The mail server answered ${answer}.`, retryAfterMs: null }
-  if (field(error, 'code') === 'EENVELOPE') return { kind: 'failed', problem: 'The mail server does not take this address.' }
-  if (field(error, 'command') === 'DATA') return { kind: 'unresolved', problem: 'The mail server did not answer in time.' }
-  return { kind: 'unreachable', problem: 'The mail server cannot be reached.', retryAfterMs: null }
+  if (typeof answer === 'number' && answer >= 500) return { kind: 'failed', problem: callWords.delivery.mailAnswered(answer) }
+  if (typeof answer === 'number' && answer >= 400) return { kind: 'unreachable', problem: callWords.delivery.mailAnswered(answer), retryAfterMs: null }
+  if (field(error, 'code') === 'EENVELOPE') return { kind: 'failed', problem: callWords.delivery.mailAddressRefused }
+  if (field(error, 'command') === 'DATA') return { kind: 'unresolved', problem: callWords.delivery.mailSilent }
+  return { kind: 'unreachable', problem: callWords.delivery.mailUnreachable, retryAfterMs: null }
 }
 
 async function sendBySmtp(smtp: SmtpConfig, message: MailMessage): Promise<SendOutcome> {
@@ -49,6 +50,6 @@ export async function sendMail(message: MailMessage, settings: MailSettings): Pr
     return { kind: 'accepted' }
   }
   catch (error) {
-    return { kind: 'unreachable', problem: `The outbox cannot be written: ${error instanceof Error ? error.message : String(error)}`, retryAfterMs: null }
+    return { kind: 'unreachable', problem: callWords.delivery.outboxUnwritable(error instanceof Error ? error.message : String(error)), retryAfterMs: null }
   }
 }

@@ -13,7 +13,7 @@ async function lookRound() {
   const db = useDatabase()
   const now = Date.now()
   reconcileAll(db, now)
-  const studios = await tick(db, now, openChannels(db, useConfig(), process.env))
+  const studios = await tick(db, now, openChannels(db, useConfig()))
   // Open pages show the calls too.
   for (const studioId of studios) change(db, studioId, 'calls', () => undefined)
 }

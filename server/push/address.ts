@@ -1,4 +1,5 @@
 import { BlockList, isIP } from 'node:net'
+import { callWords } from '#shared/words/calls'
 
 // A subscription's address comes from a browser, so anybody who can sign in could point the server at the studio's own network.
 const inside = new BlockList()
@@ -37,14 +38,14 @@ export function isAllowedAddress(address: string, allowLoopback: boolean): boole
  * What the name resolves to is checked again when the connection is made.
  */
 export function refuseEndpoint(endpoint: string, allowLoopback: boolean): string | null {
-  if (!URL.canParse(endpoint)) return 'The push address is not an address.'
+  if (!URL.canParse(endpoint)) return callWords.pushAddress.unreadable
   const url = new URL(endpoint)
   const host = bare(url.hostname)
   const here = allowLoopback && (isLoopback(host) || host === 'localhost')
-  if (url.protocol !== 'https:' && !(here && url.protocol === 'http:')) return 'The push address does not begin with https.'
-  if (url.username || url.password) return 'The push address carries a name or a password.'
+  if (url.protocol !== 'https:' && !(here && url.protocol === 'http:')) return callWords.pushAddress.notHttps
+  if (url.username || url.password) return callWords.pushAddress.credentials
   if (here) return null
-  if (host === 'localhost' || host.endsWith('.localhost')) return 'The push address points into this network.'
-  if (isIP(host) && !isAllowedAddress(host, allowLoopback)) return 'The push address points into this network.'
+  if (host === 'localhost' || host.endsWith('.localhost')) return callWords.pushAddress.inside
+  if (isIP(host) && !isAllowedAddress(host, allowLoopback)) return callWords.pushAddress.inside
   return null
 }

@@ -9,15 +9,11 @@ export interface PushKeys { publicKey: string, privateKey: string }
 const keyName = 'push key pair'
 
 /**
- * The installation's push keys: from the environment when both halves are given there, else made once and kept in
- * the database. A new pair would make every subscription worthless, so one that exists is never replaced.
- * @throws when only one half is given
+ * The installation's push keys: those that were given, else a pair made once and kept in the database. A new pair
+ * would make every subscription worthless, so one that exists is never replaced.
  */
-export function pushKeys(db: Database, env: { STILLWET_PUSH_PUBLIC_KEY?: string, STILLWET_PUSH_PRIVATE_KEY?: string } = {}): PushKeys {
-  const publicKey = env.STILLWET_PUSH_PUBLIC_KEY?.trim()
-  const privateKey = env.STILLWET_PUSH_PRIVATE_KEY?.trim()
-  if (publicKey && privateKey) return { publicKey, privateKey }
-  if (publicKey || privateKey) throw new Error('STILLWET_PUSH_PUBLIC_KEY and STILLWET_PUSH_PRIVATE_KEY belong together: give both or neither.')
+export function pushKeys(db: Database, given: PushKeys | null): PushKeys {
+  if (given) return given
   const find = () => db.select().from(serverKey).where(eq(serverKey.name, keyName)).get()
   const made = find()
   if (made) return JSON.parse(made.value) as PushKeys

@@ -7,6 +7,7 @@ import webpush from 'web-push'
 import type { SendOutcome } from '~~/server/reminders/types'
 import { isAllowedAddress, refuseEndpoint } from './address'
 import type { PushKeys } from './keys'
+import { callWords } from '#shared/words/calls'
 
 /** A browser's push address and its two keys, URL-safe base64. */
 export interface PushTarget { endpoint: string, p256dh: string, auth: string }
@@ -32,7 +33,7 @@ function guardedLookup(allowLoopback: boolean): LookupFunction {
     lookup(host, { ...options, all: true }, (error, found) => {
       if (error) return answer(error, '', 0)
       const refused = found.find(entry => !isAllowedAddress(entry.address, allowLoopback))
-      if (refused || !found[0]) return answer(new RefusedAddress('The push address points into this network.'), '', 0)
+      if (refused || !found[0]) return answer(new RefusedAddress(callWords.pushAddress.inside), '', 0)
       if (options.all) return answer(null, found)
       answer(null, found[0].address, found[0].family)
     })
@@ -59,12 +60,12 @@ function post({ endpoint, headers, body }: Sendable, settings: PushSettings): Pr
 function outcomeOf(response: IncomingMessage): SendOutcome {
   const status = response.statusCode ?? 0
   if (status >= 200 && status < 300) return { kind: 'accepted' }
-  if (status === 404 || status === 410) return { kind: 'gone', problem: 'The browser has given up this subscription.' }
+  if (status === 404 || status === 410) return { kind: 'gone', problem: callWords.delivery.browserGone }
   if (status === 429 || status >= 500) {
     const after = Number(response.headers['retry-after'])
-    return { kind: 'unreachable', problem: `The push service answered ${status}.`, retryAfterMs: Number.isFinite(after) && after > 0 ? after * 1000 : null }
+    return { kind: 'unreachable', problem: callWords.delivery.pushAnswered(status), retryAfterMs: Number.isFinite(after) && after > 0 ? after * 1000 : null }
   }
-  return { kind: 'failed', problem: `The push service answered ${status}.` }
+  return { kind: 'failed', problem: callWords.delivery.pushAnswered(status) }
 }
 
 // These are known before a byte of the message has left; anything else may have arrived.
@@ -73,8 +74,8 @@ const neverLeft = new Set(['ENOTFOUND', 'EAI_AGAIN', 'ECONNREFUSED', 'EHOSTUNREA
 function problemOf(error: unknown): SendOutcome {
   if (error instanceof RefusedAddress) return { kind: 'failed', problem: error.message }
   const code = error instanceof Error && 'code' in error ? String(error.code) : ''
-  if (neverLeft.has(code)) return { kind: 'unreachable', problem: 'The push service cannot be reached.', retryAfterMs: null }
-  return { kind: 'unresolved', problem: 'The push service did not answer in time.' }
+  if (neverLeft.has(code)) return { kind: 'unreachable', problem: callWords.delivery.pushUnreachable, retryAfterMs: null }
+  return { kind: 'unresolved', problem: callWords.delivery.pushSilent }
 }
 
 /**
@@ -93,7 +94,7 @@ export async function sendPush(target: PushTarget, payload: PushPayload, options
     )
   }
   catch {
-    return { kind: 'failed', problem: 'The keys of this subscription are not usable.' }
+    return { kind: 'failed', problem: callWords.delivery.pushKeysUnusable }
   }
   const headers = Object.fromEntries(Object.entries(details.headers).map(([name, value]) => [name, String(value)]))
   try {

@@ -14,15 +14,15 @@ const minute = 60
 const timeToLive: Record<CallKind, number> = { 'rags': 15 * minute, 'last moment to start': 30 * minute, 'ready': 240 * minute, 'before you leave': 120 * minute }
 
 /** The ways out of this installation, by its settings. */
-export function openChannels(db: Database, config: Config, env: Record<string, string | undefined>): Channels {
-  const push = { keys: pushKeys(db, env), subject: config.pushSubject, allowLoopback: config.allowLoopbackPush }
+export function openChannels(db: Database, config: Config): Channels {
+  const push = { keys: pushKeys(db, config.pushKeys), subject: config.pushSubject, allowLoopback: config.allowLoopbackPush }
   return {
     push: async (call): Promise<SendOutcome> => {
-      if (call.to.channel !== 'push') return { kind: 'failed', problem: 'This is not a browser.' }
+      if (call.to.channel !== 'push') return { kind: 'failed', problem: callWords.delivery.nobodyThere }
       const { title, body, path, stableId } = call
       return sendPush(call.to, { title, body, path, tag: stableId }, { topic: stableId, ttl: timeToLive[call.kind], urgency: isUrgent(call.kind) ? 'high' : 'normal' }, push)
     },
-    mail: async call => call.to.channel === 'mail' ? sendMail(toMail(call, call.to, config), config) : { kind: 'failed', problem: 'This is not a mail address.' },
+    mail: async call => call.to.channel === 'mail' ? sendMail(toMail(call, call.to, config), config) : { kind: 'failed', problem: callWords.delivery.nobodyThere },
   }
 }
 

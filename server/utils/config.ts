@@ -24,6 +24,8 @@ export interface Config {
   smtp: SmtpConfig | null
   /** STILLWET_PUSH_SUBJECT: mailto: or https: address a push service may write to. */
   pushSubject: string
+  /** STILLWET_PUSH_PUBLIC_KEY and STILLWET_PUSH_PRIVATE_KEY: the pair push services know this server by; null: made on first run. */
+  pushKeys: { publicKey: string, privateKey: string } | null
   /** STILLWET_ALLOW_LOOPBACK_PUSH=1: push to http://127.0.0.1, for tests; refused in production. */
   allowLoopbackPush: boolean
 }
@@ -86,6 +88,14 @@ function readPushSubject(env: Environment) {
   return subject
 }
 
+function readPushKeys(env: Environment) {
+  const publicKey = given(env, 'STILLWET_PUSH_PUBLIC_KEY')
+  const privateKey = given(env, 'STILLWET_PUSH_PRIVATE_KEY')
+  if (publicKey !== null && privateKey !== null) return { publicKey, privateKey }
+  if (publicKey === null && privateKey === null) return null
+  throw new ConfigError('STILLWET_PUSH_PUBLIC_KEY and STILLWET_PUSH_PRIVATE_KEY belong together: give both or neither.')
+}
+
 /**
  * Reads the settings out of an environment.
  * @throws {ConfigError} a sentence naming the variable and what it should be
@@ -107,6 +117,7 @@ export function readConfig(env: Environment): Config {
     sessionSecret: readSecret(env),
     smtp: readSmtp(env),
     pushSubject: readPushSubject(env),
+    pushKeys: readPushKeys(env),
     allowLoopbackPush,
   }
 }

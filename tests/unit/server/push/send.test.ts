@@ -5,6 +5,7 @@ import { afterEach, describe, expect, it, vi } from 'vitest'
 import webpush from 'web-push'
 import { isAllowedAddress, refuseEndpoint } from '~~/server/push/address'
 import { pushKeys } from '~~/server/push/keys'
+import { readConfig } from '~~/server/utils/config'
 import { sendPush } from '~~/server/push/send'
 import { testDatabase } from '../../../helpers/database'
 import { pushService } from '../../../helpers/pushReceiver'
@@ -108,14 +109,16 @@ describe('where a push may go', () => {
 describe('the push keys', () => {
   it('are made once and kept', () => {
     const db = testDatabase()
-    const made = pushKeys(db)
+    const made = pushKeys(db, null)
     expect(Buffer.from(made.publicKey, 'base64url')).toHaveLength(65)
-    expect(pushKeys(db)).toEqual(made)
+    expect(pushKeys(db, null)).toEqual(made)
   })
 
-  it('come from the environment when both halves are there', () => {
-    const db = testDatabase()
-    expect(pushKeys(db, { STILLWET_PUSH_PUBLIC_KEY: 'a', STILLWET_PUSH_PRIVATE_KEY: 'b' })).toEqual({ publicKey: 'a', privateKey: 'b' })
-    expect(() => pushKeys(db, { STILLWET_PUSH_PUBLIC_KEY: 'a' })).toThrow(/belong together/)
+  it('are those that were given', () => {
+    const given = { publicKey: 'a', privateKey: 'b' }
+    expect(pushKeys(testDatabase(), given)).toEqual(given)
+    const env = { STILLWET_SESSION_SECRET: 'x'.repeat(32), STILLWET_PUSH_PUBLIC_KEY: 'a' }
+    expect(() => readConfig(env)).toThrow(/belong together/)
+    expect(readConfig({ ...env, STILLWET_PUSH_PRIVATE_KEY: 'b' }).pushKeys).toEqual(given)
   })
 })
