@@ -8,13 +8,16 @@ import type { DoubtCause, Hold, StepKind, StepStatus } from '#shared/terms'
 
 type StartBy = Extract<NextMoment, { kind: 'start by' }>
 
+function piecesText(pieces: StartBy['pieces']): string {
+  if (pieces === null || pieces.all === 1) return ''
+  if (pieces.some < pieces.all) return ` to do the first ${pieces.some} of ${pieces.all}`
+  return pieces.all === 2 ? ' to do both' : ` to do all ${pieces.all}`
+}
+
 function startText({ at, what, stepKind, pieces }: StartBy, clock: Clock): string {
   const noun = stepNoun(stepKind, what)
-  const done = pieces === null || pieces.all === 1 ? ''
-    : pieces.some < pieces.all ? ` to do the first ${pieces.some} of ${pieces.all}`
-      : pieces.all === 2 ? ' to do both' : ` to do all ${pieces.all}`
-  if (at < clock.now) return `late: ${noun} was to start by ${clockTime(at, clock)}${done}`
-  return `start ${noun} by ${roughTime(at, clock, 'down')}${done}`
+  if (at < clock.now) return `late: ${noun} was to start by ${clockTime(at, clock)}${piecesText(pieces)}`
+  return `start ${noun} by ${roughTime(at, clock, 'down')}${piecesText(pieces)}`
 }
 
 /** The next moment of a piece: "sand lightly from 13:55", "start second varnish by 14:35 to do both", "hold by the back from 15:20". */

@@ -7,10 +7,15 @@ import type { Limit, LimitKind, Verdict, VerdictKind, VerdictReason } from '#sha
 
 // Fragments in lower case, to be joined into one line; `asSentence` makes a sentence of one.
 
+/** "the back", "the long board"; a numbered carrier goes by its own name: "Tray 3". */
+function gripText(grip: string): string {
+  return /\d/.test(grip) ? grip : `the ${lowerFirst(grip)}`
+}
+
 /** "hands off", "ask first", "hold by the back", "may be handled". Without a grip (a group with several): as each piece says. */
 export function verdictTitle(kind: VerdictKind, grip: string | null): string {
   if (kind !== 'hold by') return kind
-  return grip === null ? 'hold by the grip each piece names' : `hold by the ${grip}`
+  return grip === null ? 'hold by the grip each piece names' : `hold by ${gripText(grip)}`
 }
 
 const predictionReasons: Record<ReasonCode, string> = {
@@ -59,8 +64,8 @@ const intakeHazards = {
 
 function notThereText(where: string | null, seenAt: number | null, clock: Clock): string {
   if (where === null) return 'nobody has said where it stands'
-  const seen = seenAt === null ? '' : `, ${clockTime(seenAt, clock)}`
-  return `not where it should be: last seen ${where}${seen}`
+  const seen = [where, seenAt === null ? '' : clockTime(seenAt, clock)].filter(Boolean).join(', ')
+  return seen === '' ? 'not where it should be' : `not where it should be: last seen ${seen}`
 }
 
 /** Why a verdict says what it says. */
@@ -77,7 +82,7 @@ export function verdictReason(reason: VerdictReason, clock: Clock): string {
     case 'coat due': return `${lowerFirst(reason.what) || 'a coat'} was due ${clockTime(reason.at, clock)}`
     case 'not there': return notThereText(reason.where, reason.seenAt, clock)
     case 'intake': return `${intakeHazards[reason.question]}: no sanding, scraping, heating, piercing or cutting`
-    case 'grip wet': return `wet away from the ${reason.grip}`
+    case 'grip wet': return `wet away from ${gripText(reason.grip)}`
     case 'dry': return 'dry to handle'
     case 'cut off': return `not heard from the studio since ${clockTime(reason.since, clock)}`
   }

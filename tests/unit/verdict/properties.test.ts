@@ -109,7 +109,7 @@ describe('properties of the verdict', () => {
       const judged = pieces.map(parts => pieceVerdict(parts.map(part => ({ ...part, due: null })), now, null))
       const group = groupVerdict(judged)
       expect(group && rank(group)).toBe(Math.min(...judged.map(rank)))
-      if (group?.betterAt == null || group.betterKind === null) return
+      if (group === null || group.betterAt === null || group.betterKind === null) return
       const { betterAt, betterKind } = group
       const then = pieces.map(parts => pieceVerdict(parts.map(part => ({ ...part, due: null })), betterAt, null))
       expect(Math.min(...then.map(rank))).toBeGreaterThanOrEqual(verdictKinds.indexOf(betterKind))

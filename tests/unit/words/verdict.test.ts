@@ -56,6 +56,15 @@ describe('a verdict in words', () => {
     expect(group && verdictTitle(group.kind, group.grip)).toBe('hold by the grip each piece names')
   })
 
+  it('calls a numbered carrier by its own name', () => {
+    expect(['back', 'Long board', 'Tray 3'].map(grip => verdictTitle('hold by', grip))).toEqual(['hold by the back', 'hold by the long board', 'hold by Tray 3'])
+  })
+
+  it('leaves out of a last sighting what nobody knows', () => {
+    expect(verdictReason({ code: 'not there', where: '', seenAt: hour(8) }, at(9))).toBe('not where it should be: last seen 8:00')
+    expect(verdictReason({ code: 'not there', where: '', seenAt: null }, at(9))).toBe('not where it should be')
+  })
+
   it('dates what was not last night', () => {
     expect(verdictReason({ code: 'doubt', cause: 'chilled', fromAt: hour(-40) }, at(9))).toBe('chilled Sun 8:00: test first')
     expect(verdictReason({ code: 'doubt', cause: 'chilled', fromAt: hour(-2) }, at(9))).toBe('chilled in the night: test first')
