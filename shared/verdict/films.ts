@@ -14,8 +14,9 @@ export function isBefore(moment: Moment, at: number): boolean {
 /** A film of unknown material or time: only a maker's word on it says anything. */
 export function isUnknown(film: Film): boolean {
   if (film.handle === null) return true
-  if (film.handle.reachedAt !== null) return false
-  return film.material === null || (film.handle.p98At === null && film.handle.reason === null)
+  const { likelyAt, p98At, reachedAt, reason } = film.handle
+  if (reachedAt !== null) return false
+  return film.material === null || (p98At === null && likelyAt === null && reason === null)
 }
 
 /** WET of the truth table: before dry to handle (out of clamps, cured), whatever the film is. */
