@@ -1,5 +1,5 @@
 import { readFileSync } from 'node:fs'
-import { airTables } from '#shared/air/tables'
+import { dryingTools } from '#shared/drying/tools'
 import { BadField } from './model/fields'
 import { readCase } from './model/read-case'
 import { runCase } from './model/run-case'
@@ -41,7 +41,7 @@ function main(args: readonly string[]): number {
   try {
     if (source === undefined || args.length > 1) throw new BadField('FILE: expected one file, or - for standard input')
     const input = readInput(source)
-    const tools = { air: airTables(), zones: new Map() }
+    const tools = dryingTools()
     const cases = Array.isArray(input) ? input.map((one, i) => readCase(one, `[${i}]`)) : [readCase(input, '')]
     const results = cases.map(one => runCase(one, tools))
     process.stdout.write(`${JSON.stringify(Array.isArray(input) ? results : results[0], null, 2)}\n`)

@@ -1,6 +1,6 @@
 import { performance } from 'node:perf_hooks'
-import { airTables } from '#shared/air/tables'
-import type { DryingTools } from '#shared/drying/clock'
+import { dryingTools } from '#shared/drying/tools'
+import type { DryingTools } from '#shared/drying/tools'
 import { roomClock } from '#shared/drying/clock'
 import type { PreparedMaterial } from '#shared/drying/material'
 import { prepareMaterial } from '#shared/drying/material'
@@ -41,7 +41,7 @@ function benchOf(tools: DryingTools): Bench {
     const ageMs = Math.min(chance() * cure * 60_000, (historyDays - 1) * 24 * hourMs)
     return { coat: { appliedAt: Math.round(now - ageMs), size: pick(coatSizes), ground: pick(grounds) }, material, room: i % 3 }
   })
-  return { materials: chosen.map(m => prepareMaterial(dryingMaterial(m), tools.air)), coats, rooms }
+  return { materials: chosen.map(m => prepareMaterial(dryingMaterial(m), tools)), coats, rooms }
 }
 
 function predictAll({ materials, coats, rooms }: Bench, tools: DryingTools): number {
@@ -63,14 +63,14 @@ function timed(work: () => number): { ms: number, rungs: number } {
 /** Re-predicts 1,000 resting coats after a reading, cold and warm, and gives the lines to print. Warm: tables that depend on no reading exist. */
 export function benchPredict(): string[] {
   const coldStart = performance.now()
-  const fresh: DryingTools = { air: airTables(), zones: new Map() }
-  const bench = benchOf(fresh)
+  const tools = dryingTools()
+  const bench = benchOf(tools)
   const tablesMs = performance.now() - coldStart
-  const first = timed(() => predictAll(bench, fresh))
+  const first = timed(() => predictAll(bench, tools))
   const warm: number[] = []
   for (let round = 0; round < 21; round++) {
     for (const room of bench.rooms) room.readings = [...room.readings, { at: now + round * 60_000, tempC: 18 + round / 20, rh: 0.5 + round / 100 }]
-    warm.push(timed(() => predictAll(bench, fresh)).ms)
+    warm.push(timed(() => predictAll(bench, tools)).ms)
   }
   warm.sort((a, b) => a - b)
   const median = warm[10]!

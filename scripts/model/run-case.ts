@@ -1,4 +1,4 @@
-import type { DryingTools } from '#shared/drying/clock'
+import type { DryingTools } from '#shared/drying/tools'
 import { roomClock } from '#shared/drying/clock'
 import type { BenchSpeed } from '#shared/drying/material'
 import { prepareMaterial, sheetSpeed } from '#shared/drying/material'
@@ -10,7 +10,7 @@ const iso = (at: number | null) => at === null ? null : new Date(at).toISOString
 /** Predicts one case and writes it as the contract asks: instants in ISO 8601 UTC. */
 export function runCase({ material, coat, room, theta, now }: ModelCase, tools: DryingTools) {
   const bench: BenchSpeed = theta === null ? sheetSpeed : { kind: 'fixed', theta }
-  const prepared = prepareMaterial(material, tools.air, bench)
+  const prepared = prepareMaterial(material, tools, bench)
   const clock = roomClock(room, coat.appliedAt, tools)
   const { milestones, windows, speed, state, advice } = predictCoat(prepared, coat, [{ clock, fromAt: coat.appliedAt, toAt: null }], { now, bench })
   return {

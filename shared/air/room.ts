@@ -54,23 +54,34 @@ export function lastBefore(times: ArrayLike<number>, at: number): number {
   return low
 }
 
+/** How far the day's shape stands at an instant, in kelvin. */
+function swing(shape: DayShape, zone: ZoneClock, at: number): number {
+  return shapeAt(shape, localTimeOfDay(zone, at))
+}
+
 function tempBetween(times: ArrayLike<number>, temps: ArrayLike<number>, i: number, at: number, shape: DayShape, zone: ZoneClock): number {
   const from = times[i]!
   const to = times[i + 1]!
   const share = (at - from) / (to - from)
   const straight = lerp(temps[i]!, temps[i + 1]!, share)
   if (to - from <= longGapMs) return straight
-  const swing = (t: number) => shapeAt(shape, localTimeOfDay(zone, t))
-  return straight + swing(at) - lerp(swing(from), swing(to), share)
+  return straight + swing(shape, zone, at) - lerp(swing(shape, zone, from), swing(shape, zone, to), share)
 }
 
-function tempOf(times: ArrayLike<number>, temps: ArrayLike<number>, at: number, shape: DayShape, zone: ZoneClock, usualC: number): number {
+function tempOf(times: ArrayLike<number>, temps: ArrayLike<number>, i: number, at: number, shape: DayShape, zone: ZoneClock, usualC: number): number {
   const last = times.length - 1
-  const swing = (t: number) => shapeAt(shape, localTimeOfDay(zone, t))
-  if (last < 0) return usualC + swing(at)
-  if (at <= times[0]!) return temps[0]!
-  if (at >= times[last]!) return temps[last]! + swing(at) - swing(times[last]!)
-  return tempBetween(times, temps, lastBefore(times, at), at, shape, zone)
+  if (last < 0) return usualC + swing(shape, zone, at)
+  if (i < 0) return temps[0]!
+  if (i === last) return temps[last]! + swing(shape, zone, at) - swing(shape, zone, times[last]!)
+  return tempBetween(times, temps, i, at, shape, zone)
+}
+
+function dewOf(times: ArrayLike<number>, dewPoints: ArrayLike<number>, i: number, at: number, usualC: number): number {
+  const last = times.length - 1
+  if (last < 0) return usualC
+  if (i < 0) return dewPoints[0]!
+  if (i === last) return dewPoints[last]!
+  return lerp(dewPoints[i]!, dewPoints[i + 1]!, (at - times[i]!) / (times[i + 1]! - times[i]!))
 }
 
 function inOrder(readings: readonly Reading[]): Reading[] {
@@ -92,33 +103,42 @@ export function roomTrack(room: RoomAir, tables: AirTables, zone?: ZoneClock): R
   const shape = hourPattern(measured, clock) ?? nightShape(room.heated ? 0 : room.nightDropC)
   const knownAt = measured.map(m => m.at)
   const knownC = measured.map(m => m.tempC)
-  const temps = Float64Array.from(readings, r => r.tempC ?? tempOf(knownAt, knownC, r.at, shape, clock, room.usual.tempC))
-  const dewOf = (tempC: number, rh: number) => Math.min(tempC, tabledDewPoint(tables, rh * tabledSaturation(tables, tempC)))
+  const temps = Float64Array.from(readings, r => r.tempC ?? tempOf(knownAt, knownC, lastBefore(knownAt, r.at), r.at, shape, clock, room.usual.tempC))
+  const dewPointOf = (tempC: number, rh: number) => Math.min(tempC, tabledDewPoint(tables, rh * tabledSaturation(tables, tempC)))
   return {
     times: Float64Array.from(readings, r => r.at),
     temps,
-    dewPoints: Float64Array.from(readings, (r, i) => dewOf(temps[i]!, r.rh)),
+    dewPoints: Float64Array.from(readings, (r, i) => dewPointOf(temps[i]!, r.rh)),
     doubts: Float64Array.from(readings, r => r.doubt ?? 0),
     shape,
     zone: clock,
-    usual: { tempC: room.usual.tempC, dewPointC: dewOf(room.usual.tempC, room.usual.rh) },
+    usual: { tempC: room.usual.tempC, dewPointC: dewPointOf(room.usual.tempC, room.usual.rh) },
   }
 }
 
 /** Temperature in degrees Celsius at an instant, as the model's first section tells. */
 export function trackTemp(track: RoomTrack, at: number): number {
-  return tempOf(track.times, track.temps, at, track.shape, track.zone, track.usual.tempC)
+  return tempOf(track.times, track.temps, lastBefore(track.times, at), at, track.shape, track.zone, track.usual.tempC)
 }
 
 /** Dew point in degrees Celsius at an instant: linear between readings, held before the first and after the last. */
 export function trackDewPoint(track: RoomTrack, at: number): number {
-  const { times, dewPoints, usual } = track
-  const last = times.length - 1
-  if (last < 0) return usual.dewPointC
-  const i = lastBefore(times, at)
-  if (i < 0) return dewPoints[0]!
-  if (i === last) return dewPoints[last]!
-  return lerp(dewPoints[i]!, dewPoints[i + 1]!, (at - times[i]!) / (times[i + 1]! - times[i]!))
+  return dewOf(track.times, track.dewPoints, lastBefore(track.times, at), at, track.usual.dewPointC)
+}
+
+/** Temperature and dew point at many instants in ascending order, walking the readings once. */
+export function trackMany(track: RoomTrack, instants: Float64Array): { temps: Float64Array, dewPoints: Float64Array } {
+  const { times, shape, zone, usual } = track
+  const temps = new Float64Array(instants.length)
+  const dewPoints = new Float64Array(instants.length)
+  let i = instants.length > 0 ? lastBefore(times, instants[0]!) : -1
+  for (let k = 0; k < instants.length; k++) {
+    const at = instants[k]!
+    while (i + 1 < times.length && times[i + 1]! <= at) i++
+    temps[k] = tempOf(times, track.temps, i, at, shape, zone, usual.tempC)
+    dewPoints[k] = dewOf(times, track.dewPoints, i, at, usual.dewPointC)
+  }
+  return { temps, dewPoints }
 }
 
 /**

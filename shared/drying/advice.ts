@@ -46,7 +46,7 @@ function wetAdvice({ way, coat, spans, prediction, now }: Asked): AdviceFacts[] 
   if (thinAt < until) facts.push({ code: 'dew-margin', when: thinAt <= from ? null : said(spanAt(spans, thinAt), thinAt, now) })
   const gapC = trackTemp(clock.track, from) - trackDewPoint(clock.track, from)
   if (material.blushes && gapC < blushGapC) facts.push({ code: 'blush', gapC })
-  const ratio = ratioOfVapour(tabledSaturation(clock.air, trackDewPoint(clock.track, from)))
+  const ratio = ratioOfVapour(tabledSaturation(clock.tools.air, trackDewPoint(clock.track, from)))
   const floor = material.dryAirFloor ?? null
   if (floor !== null && ratio < floor) facts.push({ code: 'dry-air', floor })
   const tackFree = prediction.milestones.find(m => m.name === 'tack-free')?.likelyAt ?? null

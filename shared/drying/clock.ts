@@ -1,21 +1,19 @@
 import type { Driver } from '#shared/terms'
 import type { RoomAir } from '#shared/drying/types'
 import type { AirTables } from '#shared/air/tables'
-import { ratioOfVapour, tabledEvaporation, tabledSaturation } from '#shared/air/tables'
+import { ratioOfVapour, tabledSaturation } from '#shared/air/tables'
 import type { RoomTrack } from '#shared/air/room'
-import { lastBefore, roomTrack, trackDewPoint, trackTemp } from '#shared/air/room'
+import { lastBefore, roomTrack, trackDewPoint, trackMany, trackTemp } from '#shared/air/room'
 import { shapeAt } from '#shared/air/shape'
-import type { ZoneClock } from '#shared/air/zone'
-import { localTimeOfDay, offsetAt, zoneClock } from '#shared/air/zone'
-import { coldShare, moistureShare, rawRate } from '#shared/drying/rates'
+import { localTimeOfDay, offsetAt } from '#shared/air/zone'
+import { coldShare, fuses, moistureShare } from '#shared/drying/rates'
+import type { DryingTools } from '#shared/drying/tools'
+import { tabledForce, zoneOf } from '#shared/drying/tools'
 import type { PreparedMaterial } from '#shared/drying/material'
 
 const minuteMs = 60_000
 const quarterMs = 15 * minuteMs
 const dayMs = 24 * 60 * minuteMs
-
-/** Things that depend on no reading, shared by all rooms and coats; the caller keeps them. */
-export interface DryingTools { air: AirTables, zones: Map<string, ZoneClock> }
 
 /** Air at knots: temperature, RH and humidity ratio side by side. */
 interface AirSamples { temps: Float64Array, rhs: Float64Array, ratios: Float64Array }
@@ -34,9 +32,11 @@ export interface RoomClock {
   past: AirSamples
   /** 97 quarters of the repeating day, local time. */
   day: AirSamples
+  /** The two days after the turn, every quarter of an hour, for finding spells that cross midnight. */
+  ahead: { times: Float64Array, air: AirSamples }
   /** Where the repeating day's clock changes; from each `at` on, the ms since local midnight of the first day are instant + `offset`. */
   bends: { at: number, offset: number }[]
-  air: AirTables
+  tools: DryingTools
   /** Filled as materials ask: cumulative rates, and spells of cold or damp. */
   rates: Map<string, RateTable>
   spells: Map<string, Spell[]>
@@ -48,44 +48,33 @@ export interface Spell { from: number, to: number }
 /** Cumulative driving force of one driver, in force x ms: at the past's knots, through one day, and at each bend. */
 export interface RateTable { past: Float64Array, day: Float64Array, atBend: Float64Array, clock: RoomClock }
 
-function sample(track: RoomTrack, air: AirTables, temps: Float64Array, dewAt: (i: number) => number): AirSamples {
+function sample(air: AirTables, temps: Float64Array, dewPoints: Float64Array): AirSamples {
   const rhs = new Float64Array(temps.length)
   const ratios = new Float64Array(temps.length)
-  let dewC = Number.NaN
-  let vapour = 0
   for (let i = 0; i < temps.length; i++) {
-    const next = dewAt(i)
-    if (next !== dewC) vapour = tabledSaturation(air, next)
-    dewC = next
     const saturation = tabledSaturation(air, temps[i]!)
-    const held = Math.min(vapour, saturation)
+    const held = Math.min(tabledSaturation(air, dewPoints[i]!), saturation)
     rhs[i] = held / saturation
     ratios[i] = ratioOfVapour(held)
   }
   return { temps, rhs, ratios }
 }
 
+/** Every quarter of an hour and every reading from `since` to `turnAt`, both ends in. */
 function knots(track: RoomTrack, since: number, turnAt: number): Float64Array {
-  const times: number[] = []
+  const times = new Float64Array(Math.ceil((turnAt - since) / quarterMs) + track.times.length + 2)
+  let count = 0
   let reading = lastBefore(track.times, since) + 1
-  for (let at = since; at < turnAt; at = Math.floor(at / quarterMs) * quarterMs + quarterMs) {
-    while (reading < track.times.length && track.times[reading]! <= at) {
-      if (track.times[reading]! < at && track.times[reading]! > since) times.push(track.times[reading]!)
-      reading++
-    }
-    times.push(at)
+  let quarter = since
+  while (quarter < turnAt) {
+    times[count++] = quarter
+    const next = Math.min(turnAt, Math.floor(quarter / quarterMs) * quarterMs + quarterMs)
+    for (; reading < track.times.length && track.times[reading]! < next; reading++) times[count++] = track.times[reading]!
+    if (reading < track.times.length && track.times[reading]! === next) reading++
+    quarter = next
   }
-  while (reading < track.times.length && track.times[reading]! < turnAt) times.push(track.times[reading++]!)
-  times.push(turnAt)
-  return Float64Array.from(times)
-}
-
-function zoneOf(tools: DryingTools, zone: string, from: number, to: number): ZoneClock {
-  const known = tools.zones.get(zone)
-  if (known && known.from <= from && known.to >= to) return known
-  const read = zoneClock(zone, Math.min(from - 100 * dayMs, known?.from ?? Infinity), Math.max(to + 100 * dayMs, known?.to ?? -Infinity))
-  tools.zones.set(zone, read)
-  return read
+  times[count++] = turnAt
+  return times.slice(0, count)
 }
 
 /**
@@ -106,41 +95,49 @@ export function roomClock(room: RoomAir, since: number, tools: DryingTools): Roo
   const times = knots(track, since, turnAt)
   const midnight = turnAt - ((turnAt + offsetAt(zone, turnAt)) % dayMs + dayMs) % dayMs
   const anchor = trackTemp(track, turnAt) - shapeAt(track.shape, localTimeOfDay(zone, turnAt))
-  const dayTemps = Float64Array.from(track.shape, swing => anchor + swing)
-  const heldDewC = trackDewPoint(track, turnAt)
+  const dayTemps = track.shape.map(swing => anchor + swing)
+  const read = trackMany(track, times)
+  const aheadTimes = Float64Array.from({ length: 192 }, (_, i) => turnAt + (i + 1) * quarterMs)
+  const coming = trackMany(track, aheadTimes)
   const bends = [{ at: turnAt, offset: -midnight }]
   for (const [i, at] of zone.starts.entries()) if (at > turnAt) bends.push({ at, offset: zone.offsets[i]! - offsetAt(zone, turnAt) - midnight })
   return {
     since, lastReadingAt, turnAt, track, times, bends,
-    past: sample(track, tools.air, Float64Array.from(times, at => trackTemp(track, at)), i => trackDewPoint(track, times[i]!)),
-    day: sample(track, tools.air, dayTemps, () => heldDewC),
-    air: tools.air, rates: new Map(), spells: new Map(),
+    ahead: { times: aheadTimes, air: sample(tools.air, coming.temps, coming.dewPoints) },
+    past: sample(tools.air, read.temps, read.dewPoints),
+    day: sample(tools.air, dayTemps, new Float64Array(dayTemps.length).fill(trackDewPoint(track, turnAt))),
+    tools, rates: new Map(), spells: new Map(),
   }
 }
 
-function cumulate(times: ArrayLike<number>, samples: AirSamples, force: (i: number) => number): Float64Array {
-  const sums = new Float64Array(samples.temps.length)
-  let before = force(0)
-  for (let i = 1; i < sums.length; i++) {
-    const now = force(i)
-    sums[i] = sums[i - 1]! + (before + now) / 2 * (times[i]! - times[i - 1]!)
+/** Trapezoids over the knots; `forces` is turned into its own running sum to spare an array. */
+function cumulate(times: Float64Array, forces: Float64Array): Float64Array {
+  let sum = 0
+  let before = forces[0]!
+  forces[0] = 0
+  for (let i = 1; i < forces.length; i++) {
+    const now = forces[i]!
+    sum += (before + now) / 2 * (times[i]! - times[i - 1]!)
+    forces[i] = sum
     before = now
   }
-  return sums
+  return forces
 }
 
 const quarters = Float64Array.from({ length: 97 }, (_, i) => i * quarterMs)
 
-function forcesOf(driver: Driver, samples: AirSamples, air: AirTables, material: PreparedMaterial): (i: number) => number {
+function forcesOf(tools: DryingTools, driver: Driver, samples: AirSamples, material: PreparedMaterial): Float64Array {
   const { temps, rhs, ratios } = samples
   const { minTempC } = material.material
-  return (i) => {
-    const tempC = temps[i]!
-    const rh = rhs[i]!
-    const force = rawRate(driver, tempC, rh, driver === 'water' ? tabledEvaporation(air, tempC, rh) : 0)
-    const moist = driver === 'moisture' ? moistureShare(ratios[i]!, material.referenceRatio) : 1
-    return force * moist * coldShare(driver, tempC, minTempC)
+  const forces = new Float64Array(temps.length)
+  for (let i = 0; i < forces.length; i++) forces[i] = tabledForce(tools, driver, temps[i]!, rhs[i]!)
+  if (driver === 'moisture') {
+    for (let i = 0; i < forces.length; i++) forces[i] = forces[i]! * moistureShare(ratios[i]!, material.referenceRatio)
   }
+  if (minTempC !== null && fuses(driver)) {
+    for (let i = 0; i < forces.length; i++) if (temps[i]! < minTempC) forces[i] = forces[i]! * coldShare(driver, temps[i]!, minTempC)
+  }
+  return forces
 }
 
 function throughDays(day: Float64Array, local: number): number {
@@ -152,12 +149,11 @@ function throughDays(day: Float64Array, local: number): number {
 
 /** The cumulative force of a driver for a material in this room, built on first asking and then shared by every coat that wants the same. */
 export function rateTable(clock: RoomClock, driver: Driver, material: PreparedMaterial): RateTable {
-  const fuses = driver === 'water' || driver === 'joint' || driver === 'coalescence'
-  const key = `${driver}/${fuses ? material.material.minTempC : ''}/${driver === 'moisture' ? material.referenceRatio : ''}`
+  const key = `${driver}/${fuses(driver) ? material.material.minTempC : ''}/${driver === 'moisture' ? material.referenceRatio : ''}`
   const known = clock.rates.get(key)
   if (known) return known
-  const past = cumulate(clock.times, clock.past, forcesOf(driver, clock.past, clock.air, material))
-  const day = cumulate(quarters, clock.day, forcesOf(driver, clock.day, clock.air, material))
+  const past = cumulate(clock.times, forcesOf(clock.tools, driver, clock.past, material))
+  const day = cumulate(quarters, forcesOf(clock.tools, driver, clock.day, material))
   const atBend = new Float64Array(clock.bends.length)
   atBend[0] = past[past.length - 1]!
   for (let i = 1; i < atBend.length; i++) {

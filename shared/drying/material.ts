@@ -2,9 +2,9 @@ import type { Driver } from '#shared/terms'
 import type { DryingMaterial } from '#shared/drying/types'
 import type { QuantileTable } from '#shared/drying/doubt'
 import { benchVariance, quantileTable, rungDoubt, windowDoubt } from '#shared/drying/doubt'
-import type { AirTables } from '#shared/air/tables'
-import { ratioOfVapour, tabledEvaporation, tabledSaturation } from '#shared/air/tables'
-import { rawRate } from '#shared/drying/rates'
+import { ratioOfVapour, tabledSaturation } from '#shared/air/tables'
+import type { DryingTools } from '#shared/drying/tools'
+import { tabledForce } from '#shared/drying/tools'
 
 /** A rung made ready: everything that depends on no coat and no air. */
 export interface PreparedRung {
@@ -53,7 +53,7 @@ function handleRung(names: readonly string[]): number {
  * Makes a material ready for predicting: sorts its ladder by typical, tabulates its quantiles. Costs milliseconds and depends on no reading:
  * keep it while the material and the bench's speed stay the same.
  */
-export function prepareMaterial(material: DryingMaterial, tables: AirTables, bench: BenchSpeed = sheetSpeed): PreparedMaterial {
+export function prepareMaterial(material: DryingMaterial, tools: DryingTools, bench: BenchSpeed = sheetSpeed): PreparedMaterial {
   const ladder = [...material.milestones].sort((a, b) => a.typical - b.typical)
   if (ladder.length === 0) throw new RangeError('milestones: expected at least one')
   const { tempC, rh } = material.reference
@@ -63,7 +63,7 @@ export function prepareMaterial(material: DryingMaterial, tables: AirTables, ben
     driver: rung.driver,
     typical: rung.typical,
     high: rung.high,
-    referenceForce: rawRate(rung.driver, tempC, rh, tabledEvaporation(tables, tempC, rh)),
+    referenceForce: tabledForce(tools, rung.driver, tempC, rh),
     exponent: material.thicknessExponent ?? (rung.driver === 'reaction' ? 0 : 1),
     quantiles: quantileTable(rungDoubt(rung, tau2)),
   }))
@@ -77,7 +77,7 @@ export function prepareMaterial(material: DryingMaterial, tables: AirTables, ben
     rungs,
     windows: material.windows.map(([from, to]) => ({ from: onLadder(from), to: onLadder(to) })),
     windowQuantiles: quantileTable(windowDoubt(tau2)),
-    referenceRatio: ratioOfVapour(rh * tabledSaturation(tables, tempC)),
+    referenceRatio: ratioOfVapour(rh * tabledSaturation(tools.air, tempC)),
     tau2,
     handle: handleRung(rungs.map(r => r.name)),
   }

@@ -4,8 +4,8 @@ import { climb, minutesAt } from '#shared/drying/ladder'
 import type { BenchSpeed, PreparedEnd, PreparedMaterial } from '#shared/drying/material'
 import { sheetSpeed } from '#shared/drying/material'
 import { bandZ } from '#shared/drying/doubt'
-import type { Staleness, Target } from '#shared/drying/solve'
-import { extraVariance, groundVariance, solve } from '#shared/drying/solve'
+import type { Target } from '#shared/drying/solve'
+import { extraVariance, groundVariance, solve, targetAt } from '#shared/drying/solve'
 import type { Said } from '#shared/drying/tests-said'
 import { whatWasSaid } from '#shared/drying/tests-said'
 import { firstChill, tooDampBy } from '#shared/drying/refusals'
@@ -19,31 +19,24 @@ export interface PredictionView { now: number, bench?: BenchSpeed }
 
 interface Raw { likely: number, p90: number, p98: number, outside: boolean }
 
-function targetOf(material: PreparedMaterial, rung: number, extra: number): Target {
-  const { typical, quantiles } = material.rungs[rung]!
-  return { minutes: typical, rung, quantiles, extra }
-}
-
-function rawTimes(way: Climb, target: Target, theta: number, stale: Staleness, said: Said): Raw {
-  const notYetAt = said.notYetAt
-  const likely = solve(way, target, 1, theta, stale, notYetAt)
-  const p90 = solve(way, target, 2, theta, stale, notYetAt)
-  const p98 = solve(way, target, 3, theta, stale, notYetAt)
+function rawTimes(way: Climb, target: Target, theta: number): Raw {
+  const likely = solve(way, target, 1, theta)
+  const p90 = solve(way, target, 2, theta)
+  const p98 = solve(way, target, 3, theta)
   const { high } = way.material.rungs[target.rung]!
-  const outside = notYetAt !== null && (p90 === Infinity || minutesAt(way, p90, target.rung) * Math.exp(theta) > 3 * high)
+  const outside = target.tested > 0 && (p90 === Infinity || minutesAt(way, p90, target.rung) * Math.exp(theta) > 3 * high)
   return { likely, p90, p98, outside }
 }
 
-function windowTimes(way: Climb, theta: number, stale: Staleness, extra: number): WindowPrediction[] {
-  const end = (at: PreparedEnd, chance: 0 | 2): number | null => {
-    const target = { minutes: at.minutes, rung: at.rung, quantiles: way.material.windowQuantiles, extra }
-    const instant = at.minutes > 0 ? solve(way, target, chance, theta, stale, null) : way.appliedAt
-    return instant > way.appliedAt + horizonMs ? null : Math.round(instant)
-  }
-  return way.material.windows.map(({ from, to }) => ({
-    opensAt: from ? end(from, 2) : way.appliedAt,
-    shutsAt: to ? end(to, 0) : null,
-  }))
+/** A window's end has the doubt of the rung it falls in, but not what a strange ground adds, nor what tests of rungs say. */
+function windowEnd(way: Climb, end: PreparedEnd, chance: 0 | 2, theta: number, extra: number, lastReadingAt: number | null): number | null {
+  if (!(end.minutes > 0)) return way.appliedAt
+  const target = targetAt(way, end.minutes, end.rung, way.material.windowQuantiles, extra, lastReadingAt, null)
+  return withinHorizon(way, solve(way, target, chance, theta))
+}
+
+function withinHorizon(way: Climb, at: number): number | null {
+  return at > way.appliedAt + horizonMs ? null : Math.round(at)
 }
 
 /**
@@ -57,18 +50,22 @@ export function predictCoat(material: PreparedMaterial, coat: CoatCase, spans: r
   const bench = view.bench ?? sheetSpeed
   const theta = bench.kind === 'fixed' ? bench.theta : 0
   const way = climb(material, coat, spans)
-  const stale = { lastReadingAt: spans[spans.length - 1]!.clock.lastReadingAt }
+  const { lastReadingAt } = spans[spans.length - 1]!.clock
   const extra = extraVariance(material, coat, spans)
   const firstExtra = extra + (coat.ground === 'primed' ? 0 : groundVariance)
   const said = whatWasSaid(material.rungs.map(r => r.name), coat.tests ?? [])
-  const raws = material.rungs.map((_, i) => rawTimes(way, targetOf(material, i, i === 0 ? firstExtra : extra), theta, stale, said[i]!))
+  const raws = material.rungs.map(({ typical, quantiles }, i) =>
+    rawTimes(way, targetAt(way, typical, i, quantiles, i === 0 ? firstExtra : extra, lastReadingAt, said[i]!.notYetAt), theta))
   const chilledAt = firstChill(way, spans, raws[material.handle]!.likely, said)
   const milestones = upTheLadder(way, spans, raws, said, chilledAt)
   const pace = Math.exp(-theta)
   const spread = Math.exp(bandZ * Math.sqrt(material.tau2))
   const prediction: CoatPrediction = {
     milestones,
-    windows: windowTimes(way, theta, stale, extra),
+    windows: material.windows.map(({ from, to }): WindowPrediction => ({
+      opensAt: from ? windowEnd(way, from, 2, theta, extra, lastReadingAt) : way.appliedAt,
+      shutsAt: to ? windowEnd(way, to, 0, theta, extra, lastReadingAt) : null,
+    })),
     speed: { median: pace, p10: pace / spread, p90: pace * spread },
     state: chilledAt !== null && chilledAt <= view.now ? 'doubtful' : 'sound',
     chilledAt,
@@ -79,7 +76,6 @@ export function predictCoat(material: PreparedMaterial, coat: CoatCase, spans: r
 }
 
 function upTheLadder(way: Climb, spans: readonly AirSpan[], raws: readonly Raw[], said: readonly Said[], chilledAt: number | null): MilestonePrediction[] {
-  const limit = way.appliedAt + horizonMs
   let likely = way.appliedAt
   let p90 = way.appliedAt
   let p98 = way.appliedAt
@@ -95,10 +91,9 @@ function upTheLadder(way: Climb, spans: readonly AirSpan[], raws: readonly Raw[]
     likely = Math.max(likely, raw.likely)
     p90 = Math.max(p90, raw.p90, likely)
     p98 = Math.max(p98, raw.p98, p90)
-    const reason = likely > limit ? 'never' : reasonOf(way, spans, i, likely, p90, chilledAt, raw.outside) ?? carried
+    const reason = likely > way.appliedAt + horizonMs ? 'never' : reasonOf(way, spans, i, likely, p90, chilledAt, raw.outside) ?? carried
     carried = reason
-    const instant = (at: number) => at > limit ? null : Math.round(at)
-    return { name, likelyAt: instant(likely), p90At: reason ? null : instant(p90), p98At: reason ? null : instant(p98), reachedAt: null, reason }
+    return { name, likelyAt: withinHorizon(way, likely), p90At: reason ? null : withinHorizon(way, p90), p98At: reason ? null : withinHorizon(way, p98), reachedAt: null, reason }
   })
 }
 

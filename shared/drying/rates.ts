@@ -1,6 +1,6 @@
 import type { Driver } from '#shared/terms'
 import type { Air } from '#shared/drying/types'
-import { evaporationForce, saturatedRh } from '#shared/air/tables'
+import { evaporationForce } from '#shared/air/tables'
 import { humidityRatio } from '#shared/air/psychrometrics'
 
 const gasConstant = 8.314462618
@@ -30,18 +30,28 @@ function dampOxidation(rh: number): number {
   return 1 / (1 + Math.max(0, rh - 0.5) / 0.3)
 }
 
-/**
- * Driving force of a driver in arbitrary units of its own: only quotients mean anything. `evaporation` is the open film's
- * force in sqrt(Pa K), used by `water` alone. `moisture` leaves the air's water out: its quotient is clipped, see `moistureShare`.
- */
-export function rawRate(driver: Driver, tempC: number, rh: number, evaporation: number): number {
-  if (driver === 'water') return rh >= saturatedRh ? 0 : evaporation
+/** The temperature's part of a driver's rate, in units of its own: only quotients mean anything. 1 for `water`, whose force has both parts in one. */
+export function pace(driver: Driver, tempC: number): number {
+  if (driver === 'water') return 1
   if (driver === 'solvent') return arrhenius(tempC, solventHeat)
   const [cold, warm] = energies[driver]
-  const pace = arrhenius(tempC, cold, warm)
-  if (driver === 'joint') return pace * (1 - rh) ** 0.4
-  if (driver === 'oxidation') return pace * dampOxidation(rh)
-  return pace
+  return arrhenius(tempC, cold, warm)
+}
+
+/** What relative humidity (0..1) leaves of a driver's pace; `water` and `moisture` have their own ways with the air's water. */
+export function humidityShare(driver: Driver, rh: number): number {
+  if (driver === 'joint') return (1 - rh) ** 0.4
+  return driver === 'oxidation' ? dampOxidation(rh) : 1
+}
+
+/** Films and joints that need warmth to fuse, and stop under their minimum temperature. */
+export function fuses(driver: Driver): boolean {
+  return driver === 'water' || driver === 'joint' || driver === 'coalescence'
+}
+
+/** Driving force of a driver in units of its own. `moisture` leaves the air's water out: its quotient is clipped, see `moistureShare`. */
+function rawRate(driver: Driver, { tempC, rh }: Air): number {
+  return driver === 'water' ? evaporationForce(tempC, rh) : pace(driver, tempC) * humidityShare(driver, rh)
 }
 
 /** Share of its reference pace that the water in the air allows a moisture cure: W/W_ref, at least 0.1, at most 3. */
@@ -51,7 +61,7 @@ export function moistureShare(ratio: number, referenceRatio: number): number {
 
 /** 1 at the minimum temperature and above, 0 from 2 degrees below it, for films that need warmth to fuse; 1 for the others. */
 export function coldShare(driver: Driver, tempC: number, minTempC: number | null): number {
-  if (minTempC === null || (driver !== 'water' && driver !== 'joint' && driver !== 'coalescence')) return 1
+  if (minTempC === null || !fuses(driver)) return 1
   return Math.min(1, Math.max(0, (tempC - minTempC + 2) / 2))
 }
 
@@ -74,9 +84,8 @@ export function driverRate(driver: Driver, air: Air, reference: Air, minTempC: n
     if (!(tempC >= -40 && tempC <= 70)) throw new RangeError(`tempC: expected a number from -40 to 70, got ${tempC}`)
     if (!(rh >= 0 && rh <= 1)) throw new RangeError(`rh: expected a number from 0 to 1, got ${rh}`)
   }
-  const raw = (at: Air) => rawRate(driver, at.tempC, at.rh, driver === 'water' ? evaporationForce(at.tempC, at.rh) : 0)
   const moist = driver === 'moisture' ? moistureShare(humidityRatio(air.tempC, air.rh), humidityRatio(reference.tempC, reference.rh)) : 1
-  return raw(air) / raw(reference) * moist * coldShare(driver, air.tempC, minTempC) * windShare(driver, airSpeed)
+  return rawRate(driver, air) / rawRate(driver, reference) * moist * coldShare(driver, air.tempC, minTempC) * windShare(driver, airSpeed)
 }
 
 /** The same, with what it came from: "0.41 of sheet speed: 78 % humidity". */

@@ -10,11 +10,28 @@ const hourMs = 3_600_000
 /** The 90 % point of Student's t with 4 degrees: where the heavy tail is tied to the sheet's. */
 const studentNinety = studentFourExceeded(0.1)
 
-/** A target on the ladder: reference minutes, the rung whose clock runs on past them, and its doubt. */
-export interface Target { minutes: number, rung: number, quantiles: QuantileTable, extra: number }
+/** A target on the ladder: reference minutes, the rung whose clock runs on past them, its doubt, and what is known of it so far. */
+export interface Target {
+  minutes: number
+  rung: number
+  quantiles: QuantileTable
+  /** Variance beyond the sheet's. */
+  extra: number
+  /** ms UTC of the last reading of the air it stands in, null when there is none, and the reference minutes its clock showed then. */
+  lastReadingAt: number | null
+  measured: number
+  /** Reference minutes at its last "not yet", 0 when there was none. */
+  tested: number
+}
 
-/** How stale the air is for one coat: the instant of the last reading that bears on it, null when there is none. */
-export interface Staleness { lastReadingAt: number | null }
+/** Sets up a target for one coat. `notYetAt` in ms UTC, or null. */
+export function targetAt(way: Climb, minutes: number, rung: number, quantiles: QuantileTable, extra: number, lastReadingAt: number | null, notYetAt: number | null): Target {
+  return {
+    minutes, rung, quantiles, extra, lastReadingAt,
+    measured: lastReadingAt === null ? 0 : minutesAt(way, lastReadingAt, rung),
+    tested: notYetAt === null ? 0 : minutesAt(way, notYetAt, rung),
+  }
+}
 
 /** Variance that air `hours` old adds where nothing is measured: 0 at 0 h, 0.01 at 6 h, 0.0625 from 24 h. */
 export function staleVariance(hours: number): number {
@@ -47,20 +64,19 @@ function wordVariance(spans: readonly AirSpan[]): number {
   return most * most
 }
 
-function staleAt(stale: Staleness, minutes: number, measured: number, at: number): number {
-  if (stale.lastReadingAt === null) return 0.0625
-  if (at <= stale.lastReadingAt) return 0
+function staleAt({ lastReadingAt, measured }: Target, minutes: number, at: number): number {
+  if (lastReadingAt === null) return 0.0625
+  if (at <= lastReadingAt) return 0
   const share = (minutes - measured) / minutes
-  return share * share * staleVariance((at - stale.lastReadingAt) / hourMs)
+  return share * share * staleVariance((at - lastReadingAt) / hourMs)
 }
 
 /**
  * First instant at which the chance of having reached a target is met; Infinity when never. `theta` is a fixed log speed (0 on the sheet's).
  * Each round takes the doubt of the instant before; from the chance of 50 % up the rounds rise to the first crossing, which is the running maximum.
  */
-export function solve(way: Climb, target: Target, chance: Chance, theta: number, stale: Staleness, notYetAt: number | null): number {
-  const measured = stale.lastReadingAt === null ? 0 : minutesAt(way, stale.lastReadingAt, target.rung)
-  const tested = notYetAt === null ? 0 : minutesAt(way, notYetAt, target.rung)
+export function solve(way: Climb, target: Target, chance: Chance, theta: number): number {
+  const { tested } = target
   let extra = target.extra
   let at = Number.NaN
   for (let round = 0; round < 40; round++) {
@@ -69,7 +85,7 @@ export function solve(way: Climb, target: Target, chance: Chance, theta: number,
     const next = instantOf(way, minutes, target.rung)
     if (next === at || Math.abs(next - at) < 500) return next
     at = next
-    extra = target.extra + staleAt(stale, minutes, measured, at)
+    extra = target.extra + staleAt(target, minutes, at)
   }
   return at
 }

@@ -1,40 +1,37 @@
-import type { RoomClock, Spell } from '#shared/drying/clock'
-import { trackDewPoint, trackTemp } from '#shared/air/room'
+import type { AirTables } from '#shared/air/tables'
 import { tabledSaturation } from '#shared/air/tables'
 import { offsetAt } from '#shared/air/zone'
+import type { RoomClock, Spell } from '#shared/drying/clock'
 
-const quarterMs = 900_000
 const dayMs = 86_400_000
 
-function gather(times: readonly number[], excess: readonly number[]): Spell[] {
-  const spells: Spell[] = []
-  const crossing = (i: number) => times[i - 1]! + (times[i]! - times[i - 1]!) * excess[i - 1]! / (excess[i - 1]! - excess[i]!)
-  let from: number | null = null
-  for (let i = 0; i < times.length; i++) {
-    const inside = excess[i]! > 0
-    if (inside && from === null) from = i === 0 ? times[0]! : crossing(i)
-    if (!inside && from !== null) {
-      spells.push({ from, to: crossing(i) })
-      from = null
-    }
-  }
-  if (from !== null) spells.push({ from, to: times.at(-1)! })
-  return spells
-}
+/** By how much the air meets a condition: it does while this is over 0. `limit` is the condition's own figure. */
+type Excess = (tempC: number, rh: number, limit: number, air: AirTables) => number
 
 /** The past and two days ahead: the days after that repeat the second. */
-function spellsOf(clock: RoomClock, key: string, excess: (tempC: number, rh: number) => number): Spell[] {
+function spellsOf(clock: RoomClock, key: string, excess: Excess, limit: number): Spell[] {
   const known = clock.spells.get(key)
   if (known) return known
-  const times = [...clock.times]
-  const over = times.map((_, i) => excess(clock.past.temps[i]!, clock.past.rhs[i]!))
-  for (let i = 1; i <= 192; i++) {
-    const at = clock.turnAt + i * quarterMs
-    const tempC = trackTemp(clock.track, at)
-    times.push(at)
-    over.push(excess(tempC, Math.min(1, tabledSaturation(clock.air, trackDewPoint(clock.track, at)) / tabledSaturation(clock.air, tempC))))
+  const { times, past, ahead, tools } = clock
+  const spells: Spell[] = []
+  let from = Infinity
+  let before = 0
+  let beforeAt = clock.since
+  const all = times.length + ahead.times.length
+  for (let i = 0; i < all; i++) {
+    const j = i - times.length
+    const at = j < 0 ? times[i]! : ahead.times[j]!
+    const now = j < 0 ? excess(past.temps[i]!, past.rhs[i]!, limit, tools.air) : excess(ahead.air.temps[j]!, ahead.air.rhs[j]!, limit, tools.air)
+    const crossing = i === 0 ? at : beforeAt + (at - beforeAt) * before / (before - now)
+    if (now > 0 && from === Infinity) from = crossing
+    if (now <= 0 && from < Infinity) {
+      spells.push({ from, to: crossing })
+      from = Infinity
+    }
+    before = now
+    beforeAt = at
   }
-  const spells = gather(times, over)
+  if (from < Infinity) spells.push({ from, to: beforeAt })
   clock.spells.set(key, spells)
   return spells
 }
@@ -59,17 +56,19 @@ function firstSpell(clock: RoomClock, spells: readonly Spell[], from: number, le
   return Infinity
 }
 
+const underLimit: Excess = (tempC, _rh, limit) => limit - tempC
+// "At or over": a hair under the ceiling counts as on it, so that a reading of just the ceiling is not lost to rounding.
+const atCeiling: Excess = (_tempC, rh, limit) => rh - limit + 1e-6
+const nearDew: Excess = (tempC, rh, limit, air) => rh * tabledSaturation(air, tempC) - tabledSaturation(air, tempC - limit)
+
 /** First instant at or after `from` (ms UTC) at which the room is under a temperature, read or projected; Infinity when none comes. */
 export function firstCold(clock: RoomClock, minTempC: number, from: number): number {
-  const spells = spellsOf(clock, `cold ${minTempC}`, tempC => minTempC - tempC)
-  return firstSpell(clock, spells, from, 0)
+  return firstSpell(clock, spellsOf(clock, `cold ${minTempC}`, underLimit, minTempC), from, 0)
 }
 
 /** Start of the first half hour in a row, from `from` on, with RH at or over a ceiling (0..1); Infinity when none comes. */
 export function firstDampHalfHour(clock: RoomClock, ceiling: number, from: number): number {
-  // "At or over": a hair under the ceiling counts as on it, so that a reading of just the ceiling is not lost to rounding.
-  const spells = spellsOf(clock, `damp ${ceiling}`, (_, rh) => rh - ceiling + 1e-6)
-  return firstSpell(clock, spells, from, 30 * 60_000)
+  return firstSpell(clock, spellsOf(clock, `damp ${ceiling}`, atCeiling, ceiling), from, 30 * 60_000)
 }
 
 /** Degrees a surface must stay above the dew point for a coat to go on, or to stay on while wet (ISO 8502-4 practice). */
@@ -77,6 +76,5 @@ export const dewMarginC = 3
 
 /** First instant from `from` on at which the air is less than 3 degrees above its dew point; Infinity when none comes. */
 export function firstThinDewMargin(clock: RoomClock, from: number): number {
-  const spells = spellsOf(clock, 'dew', (tempC, rh) => rh * tabledSaturation(clock.air, tempC) - tabledSaturation(clock.air, tempC - dewMarginC))
-  return firstSpell(clock, spells, from, 0)
+  return firstSpell(clock, spellsOf(clock, 'dew', nearDew, dewMarginC), from, 0)
 }
