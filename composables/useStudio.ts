@@ -1,0 +1,51 @@
+import { useEventListener, useIntervalFn } from '@vueuse/core'
+import { readPiece } from '#shared/verdict/piece'
+import type { ReadPiece } from '#shared/verdict/piece'
+import { cutOffAfterMs } from '#shared/verdict/verdict'
+import type { Clock } from '#shared/time'
+import { studioZone } from '#shared/time'
+import { withUntold } from '#shared/verdict/untold'
+
+/**
+ * The studio on a page: loaded on the server, kept up by the live stream, read anew as the clock moves. `pieces` holds
+ * every piece as `readPiece` reads it, so that all screens say the same.
+ * @param wallToken for a wall tablet without a session
+ */
+export async function useStudio(wallToken: string | null = null) {
+  const store = useStudioStore()
+  const untold = useUntoldStore()
+  const { session } = useSession()
+  const shell = useShell()
+  const deviceNow = useClock()
+  await callOnce(`studio ${wallToken ?? ''}`, () => store.load(wallToken), { mode: 'navigation' })
+
+  const now = computed(() => deviceNow.value + store.clockShift)
+  const zone = computed(() => studioZone(store.state?.studio.zone ?? 'UTC'))
+  const clock = computed((): Clock => ({ now: now.value, zone: zone.value }))
+  const heardAt = computed(() => (store.heardAt === null ? null : store.heardAt + store.clockShift))
+  const cutOff = computed(() => heardAt.value !== null && now.value - heardAt.value >= cutOffAfterMs)
+  const who = computed(() => {
+    const member = session.value?.member
+    return member ? { role: member.role, helperKinds: member.stepKinds, equipped: false } : null
+  })
+  const pieces = computed((): ReadPiece[] => {
+    const state = store.state
+    if (!state) return []
+    return state.pieces.map(piece => readPiece(withUntold(piece, untold.acts), state, now.value, heardAt.value, who.value))
+  })
+
+  watchEffect(() => {
+    shell.value = { zone: store.state?.studio.zone ?? null, studio: store.state?.studio.name ?? null, notHeardSince: cutOff.value ? heardAt.value : null }
+  })
+  const live = useLive(wallToken)
+  watch(live.heardAt, at => at !== null && store.hear(at))
+  watch(live.revision, revision => revision !== null && revision !== store.state?.revision && void store.load(wallToken))
+  onMounted(() => {
+    untold.start()
+    void untold.tellAll().then(() => untold.acts.length > 0 || store.load(wallToken))
+  })
+  useEventListener('online', () => void untold.tellAll())
+  useIntervalFn(() => untold.acts.length > 0 && void untold.tellAll(), 15_000)
+
+  return { store, state: computed(() => store.state), pieces, now, zone, clock, heardAt, cutOff, who, reload: () => store.load(wallToken) }
+}

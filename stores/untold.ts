@@ -1,0 +1,73 @@
+import { defineStore } from 'pinia'
+import { FetchError } from 'ofetch'
+import type { ActRequest } from '#shared/schemas/act'
+
+const shelf = 'stillwet untold'
+
+/** What came of telling an act. `later`: not reached; it is kept on this device and told as soon as it can be. */
+export type Told =
+  | { outcome: 'told', actId: number }
+  | { outcome: 'later' }
+  | { outcome: 'refused', message: string, fields: Record<string, string>, current: unknown }
+
+function readShelf(): ActRequest[] {
+  try {
+    const kept: unknown = JSON.parse(localStorage.getItem(shelf) ?? '[]')
+    return Array.isArray(kept) ? kept as ActRequest[] : []
+  }
+  catch {
+    return []
+  }
+}
+
+/** The refusal that came with an answer, or null when there was no answer of ours. */
+function refusalOf(error: unknown): Extract<Told, { outcome: 'refused' }> | null {
+  if (!(error instanceof FetchError) || error.statusCode === undefined || error.statusCode >= 500) return null
+  const { message, fields, current } = (error.data?.data ?? {}) as { message?: string, fields?: Record<string, string>, current?: unknown }
+  return { outcome: 'refused', message: message ?? error.message, fields: fields ?? {}, current: current ?? null }
+}
+
+/** Acts that this device has not been able to tell yet: nothing tapped is ever lost, not to a dead spot nor to a closed page. */
+export const useUntoldStore = defineStore('untold', () => {
+  const acts = ref<ActRequest[]>([])
+  const refused = ref<{ act: ActRequest, message: string }[]>([])
+
+  const keep = () => localStorage.setItem(shelf, JSON.stringify(acts.value))
+
+  function drop(act: ActRequest) {
+    acts.value = acts.value.filter(each => each.clientKey !== act.clientKey)
+    keep()
+  }
+
+  /** Tells one act, keeping it on the device until the studio has answered. */
+  async function tell(act: ActRequest): Promise<Told> {
+    if (!acts.value.some(each => each.clientKey === act.clientKey)) acts.value = [...acts.value, act]
+    keep()
+    try {
+      const { actId } = await $fetch<{ actId: number }>('/api/acts', { method: 'POST', body: act })
+      drop(act)
+      return { outcome: 'told', actId }
+    }
+    catch (error) {
+      const refusal = refusalOf(error)
+      if (!refusal) return { outcome: 'later' }
+      drop(act)
+      return refusal
+    }
+  }
+
+  /** Tells what waits, in the order it was tapped; stops at the first that does not get through. */
+  async function tellAll() {
+    for (const act of [...acts.value]) {
+      const told = await tell(act)
+      if (told.outcome === 'later') return
+      if (told.outcome === 'refused') refused.value = [...refused.value, { act, message: told.message }]
+    }
+  }
+
+  function start() {
+    acts.value = readShelf()
+  }
+
+  return { acts, refused, tell, tellAll, start }
+})
