@@ -2,8 +2,8 @@ import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { PieceState } from '#shared/schemas/piece-state'
 import type { Told } from '~/stores/untold'
 
-/** A fresh key for one tap. */
-export const newClientKey = () => crypto.randomUUID()
+/** A fresh key for one tap. `randomUUID` is not there over plain http in a studio's network. */
+export const newClientKey = () => Array.from(crypto.getRandomValues(new Uint8Array(16)), byte => byte.toString(16).padStart(2, '0')).join('')
 
 /**
  * Telling acts from a page: one tap, one request, told again under the same key until the studio has answered.

@@ -1,5 +1,5 @@
-import { and, asc, eq, isNull, sql } from 'drizzle-orm'
-import { keepOut, place, room, stay, part, piece, studio } from '~~/db/schema'
+import { and, asc, eq, isNull } from 'drizzle-orm'
+import { keepOut, part, piece, place, room, stay, studio } from '~~/db/schema'
 import { memberNames } from '~~/server/services/member-names'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
@@ -33,10 +33,12 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
 
 /** The places with how many size units stand there now. */
 export function placeStates(db: Reader, studioId: number): PlaceState[] {
-  const taken = db.select({ placeId: stay.placeId, units: sql<number>`sum(${piece.sizeUnits})` }).from(stay)
+  // A piece takes its room on a place once, however many of its parts lie there.
+  const standing = db.selectDistinct({ placeId: stay.placeId, pieceId: piece.id, units: piece.sizeUnits }).from(stay)
     .innerJoin(part, eq(part.id, stay.partId)).innerJoin(piece, and(eq(piece.id, part.pieceId), isNull(piece.goneAt)))
-    .where(scoped(stay, studioId, isNull(stay.toAt))).groupBy(stay.placeId).all()
-  const units = new Map(taken.map(row => [row.placeId, row.units]))
+    .where(scoped(stay, studioId, isNull(stay.toAt))).all()
+  const units = new Map<number, number>()
+  for (const row of standing) units.set(row.placeId, (units.get(row.placeId) ?? 0) + row.units)
   return db.select().from(place).where(scoped(place, studioId)).orderBy(asc(place.sort), asc(place.id)).all()
     .map(row => ({ id: row.id, roomId: row.roomId, name: row.name, kind: row.kind, capacity: row.capacity, taken: units.get(row.id) ?? 0 }))
 }
