@@ -11,7 +11,7 @@ export default withNuxt(
       'no-warning-comments': ['error', { terms: ['todo', 'fixme', 'xxx', 'hack'] }],
       'max-lines': ['error', { max: 300, ...length }],
       'max-lines-per-function': ['error', { max: 50, ...length }],
-      'eqeqeq': ['error', 'always'],
+      'eqeqeq': ['error', 'always', { null: 'ignore' }],
       'no-console': 'error',
       '@stylistic/operator-linebreak': 'off',
       '@stylistic/quote-props': 'off',

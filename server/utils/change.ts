@@ -35,7 +35,8 @@ export function change<T>(db: Database, studioId: number, kind: ChangeKind, work
   }
 }
 
-const codeOf = (error: unknown) => error instanceof Error && 'code' in error ? error.code : null
+/** SQLite's code, also where the query builder has wrapped its error in one of its own. */
+const codeOf = (error: unknown): unknown => !(error instanceof Error) ? null : 'code' in error ? error.code : codeOf(error.cause)
 
 /** Whether the database refused a second row of the same name. */
 export const isDuplicate = (error: unknown) => codeOf(error) === 'SQLITE_CONSTRAINT_UNIQUE' || codeOf(error) === 'SQLITE_CONSTRAINT_PRIMARYKEY'

@@ -75,6 +75,9 @@ function migrateUnwatched(db: Database, migrationsFolder: string) {
   db.$client.pragma('foreign_keys = ON')
 }
 
+/** SQLite's own words, without the statement the query builder wraps around them. */
+const rootOf = (error: unknown): string => !(error instanceof Error) ? String(error) : error.cause instanceof Error ? rootOf(error.cause) : error.message
+
 /**
  * Opens the file and brings it up to date, after a copy when there was something to lose.
  * @throws a sentence saying what failed and where the copy lies
@@ -92,7 +95,7 @@ export function prepareDatabase(file: string, migrationsFolder: string, backupFo
   }
   catch (error) {
     db?.$client.close()
-    const why = error instanceof Error ? error.message.replace(/\.$/, '') : String(error)
+    const why = rootOf(error).replace(/\.$/, '')
     const kept = copy ? ` A copy from before lies at ${copy}.` : ''
     throw new Error(`The database ${file} cannot be used: ${why}.${kept}`, { cause: error })
   }

@@ -17,8 +17,10 @@ export interface Visitor {
 export function visitor(origin: string): Visitor {
   let cookie = ''
   async function send<T>(method: string, path: string, body?: unknown, headers: Record<string, string> = {}): Promise<Answer<T>> {
-    const sent = body === undefined ? {} : { 'content-type': 'application/json' }
-    const response = await fetch(origin + path, { method, redirect: 'manual', headers: { accept: 'application/json', ...sent, ...(cookie ? { cookie } : {}), ...headers }, body: body === undefined ? undefined : JSON.stringify(body) })
+    const sent = new Headers({ accept: 'application/json', ...headers })
+    if (body !== undefined) sent.set('content-type', 'application/json')
+    if (cookie) sent.set('cookie', cookie)
+    const response = await fetch(origin + path, { method, redirect: 'manual', headers: sent, body: body === undefined ? undefined : JSON.stringify(body) })
     const given = response.headers.getSetCookie().find(line => line.startsWith('stillwet='))?.split(';')[0]
     if (given !== undefined) cookie = given
     const text = await response.text()

@@ -1,0 +1,59 @@
+import { roomOf } from './rows'
+import type { Rows } from './rows'
+import type { Role } from '#shared/terms'
+
+export interface RouteCase {
+  /** The lowest role that may, or a door that asks for none. */
+  least: Role | 'anyone' | 'signed in' | 'wall'
+  /** Fills [id] or [token] of the path from the first studio. */
+  at?: keyof Rows
+  body?: (rows: Rows) => unknown
+  /**
+   * What keeps studios apart: `row` the path names a row, another studio's owner gets 404; `named` the body
+   * names one, likewise; `view` the answer must hold nothing of the first studio; `none` with the reason beside it.
+   */
+  apart: 'row' | 'named' | 'view' | 'none'
+}
+
+const place = (rows: Rows) => ({ roomId: rows.room, name: 'Rail', kind: 'rail', capacity: 4, sort: 1 })
+
+/** Every file under server/api, by its path. A new route is added here or the suite fails. */
+export const routes: Record<string, RouteCase> = {
+  // Doors: they ask who one is and touch no studio's rows.
+  'auth/session.get.ts': { least: 'anyone', apart: 'view' },
+  'auth/sign-in.post.ts': { least: 'anyone', apart: 'none', body: () => ({ email: 'nobody@example.test', password: 'wrong' }) },
+  'auth/sign-out.post.ts': { least: 'anyone', apart: 'none' },
+  'auth/studio.post.ts': { least: 'signed in', apart: 'named', body: () => ({ studioId: 1 }) },
+  'studios.get.ts': { least: 'anyone', apart: 'view' },
+  'studios.post.ts': { least: 'anyone', apart: 'none', body: () => ({}) },
+  // An invitation's secret opens it to whoever holds it: that is what it is for.
+  'join/[token].get.ts': { least: 'anyone', apart: 'none', at: 'invitationToken' },
+  'join/[token].post.ts': { least: 'anyone', apart: 'none', at: 'invitationToken', body: () => ({}) },
+
+  'live.get.ts': { least: 'wall', apart: 'view' },
+  'studio.get.ts': { least: 'helper', apart: 'view' },
+  'studio.patch.ts': { least: 'owner', apart: 'view', body: () => ({ usualRh: 0.5 }) },
+  'members/index.get.ts': { least: 'helper', apart: 'view' },
+  'members/[id].patch.ts': { least: 'owner', apart: 'row', at: 'member', body: () => ({ stepKinds: ['coat'] }) },
+  'members/[id].delete.ts': { least: 'owner', apart: 'row', at: 'member' },
+  'invitations/index.get.ts': { least: 'owner', apart: 'view' },
+  'invitations/index.post.ts': { least: 'owner', apart: 'view', body: () => ({ role: 'helper' }) },
+  'invitations/[id].delete.ts': { least: 'owner', apart: 'row', at: 'invitation' },
+  'wall-links/index.get.ts': { least: 'owner', apart: 'view' },
+  'wall-links/index.post.ts': { least: 'owner', apart: 'view', body: () => ({ name: 'Door' }) },
+  'wall-links/[id].delete.ts': { least: 'owner', apart: 'row', at: 'wallLink' },
+  'hours/index.get.ts': { least: 'helper', apart: 'view' },
+  'hours/index.put.ts': { least: 'owner', apart: 'named', body: rows => ({ memberId: rows.member, hours: [{ weekday: 1, fromMin: 540, toMin: 1020 }] }) },
+  'closures/index.get.ts': { least: 'helper', apart: 'view' },
+  'closures/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ memberId: rows.member, name: '', fromDate: '2030-06-01', toDate: '2030-06-01' }) },
+  'closures/[id].delete.ts': { least: 'helper', apart: 'row', at: 'closure' },
+  'rooms/index.get.ts': { least: 'helper', apart: 'view' },
+  'rooms/index.post.ts': { least: 'maker', apart: 'view', body: () => roomOf('Loft') },
+  'rooms/[id].patch.ts': { least: 'maker', apart: 'row', at: 'room', body: () => ({ sort: 3 }) },
+  'rooms/[id].delete.ts': { least: 'maker', apart: 'row', at: 'room' },
+  'places/index.post.ts': { least: 'maker', apart: 'named', body: place },
+  'places/[id].patch.ts': { least: 'maker', apart: 'row', at: 'place', body: () => ({ capacity: 8 }) },
+  'places/[id].delete.ts': { least: 'maker', apart: 'row', at: 'place' },
+  'calls/index.get.ts': { least: 'helper', apart: 'view' },
+  'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
+}
