@@ -80,7 +80,7 @@ export const groundMaterials: readonly LibraryMaterial[] = [
     reference: [20, 0.5, planning], minTempC: [15, practice], maxRh: [0.75, planning],
     milestones: [
       rung('set-to-touch', 'gel', [3, 6, 12], planning),
-      rung('ready-to-recoat', 'water', [15, 30, 90], practice, 'The shine has gone all over.'),
+      rung('ready-to-recoat', 'water', [15, 35, 90], practice, 'The shine has gone all over.'),
       rung('dry-to-handle', 'water', hours(2, 4, 8), practice),
       rung('dry-to-sand-lightly', 'water', hours(6, 12, 24), practice, 'A dry cloth brings up a shine and takes off no colour.'),
       rung('cured', 'water', days(1, 2, 4), practice),

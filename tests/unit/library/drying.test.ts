@@ -15,6 +15,13 @@ describe('what the clock takes from a library material', () => {
     expect(drying.milestones[0]).toEqual({ name: 'set-to-touch', driver: 'water', low: 10, typical: 30, high: 60 })
   })
 
+  it('lets resin cure at its own pace however thick it is', () => {
+    const resin = findLibraryMaterial('epoxy-coating')
+    if (!resin) throw new Error('no resin')
+    expect(dryingMaterial(resin).thicknessExponent).toBe(0)
+    expect(dryingMaterial(resin).windows).toEqual([[180, 480]])
+  })
+
   it('says null for what it does not know', () => {
     expect(findLibraryMaterial('cheese')).toBeNull()
   })
