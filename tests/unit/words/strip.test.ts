@@ -1,30 +1,11 @@
 import { describe, expect, it } from 'vitest'
-import { wallClock } from '#shared/time'
-import { stripSentence, swatchSentence } from '#shared/words/strip'
-import { grain, whenWords } from '#shared/words/when'
+import { stripAxis, axisTicks } from '#shared/strip'
+import { studioZone } from '#shared/time'
+import { stripSentence, swatchSentence, tickWords } from '#shared/words/strip'
 
 const utc = (iso: string) => Date.parse(iso)
 const nowAt = utc('2026-12-01T13:20:00Z')
-const clock = wallClock('Europe/Berlin')
 const hour = 3_600_000
-
-describe('a time in words', () => {
-  it('carries the weekday only when it is not today', () => {
-    expect(whenWords(utc('2026-12-01T12:55:00Z'), { nowAt, clock })).toBe('13:55')
-    expect(whenWords(utc('2026-12-02T02:00:00Z'), { nowAt, clock })).toBe('Wed 03:00')
-    expect(whenWords(utc('2026-12-15T07:00:00Z'), { nowAt, clock })).toBe('15 Dec 08:00')
-  })
-
-  it('is no finer than its doubt', () => {
-    expect([0, hour, 2 * hour, 24 * hour].map(grain)).toEqual([1, 5, 15, 720])
-    // 13:02 rounded up to 5 min is 13:05, to 15 min 13:15.
-    const at = utc('2026-12-01T12:02:00Z')
-    expect(whenWords(at, { nowAt, clock, doubt: hour, round: 'up' })).toBe('13:05')
-    expect(whenWords(at, { nowAt, clock, doubt: 3 * hour, round: 'up' })).toBe('13:15')
-    expect(whenWords(at + 24 * hour, { nowAt, clock, doubt: 30 * hour })).toBe('Wed afternoon')
-    expect(whenWords(at + 24 * hour, { nowAt, clock, doubt: 30 * hour, round: 'up' })).toBe('end of Wed')
-  })
-})
 
 describe('a swatch in words', () => {
   it('says how far it is', () => {
@@ -44,11 +25,21 @@ describe('a strip in words', () => {
       windows: [{ opensAt: utc('2026-12-01T13:00:00Z'), shutsAt: utc('2026-12-02T02:00:00Z') }],
       planned: [{ at: utc('2026-12-01T13:35:00Z'), label: 'second varnish' }],
     })
-    // 15:31 to the nearest 5 min, 16:12 up to the next.
-    expect(sentence).toBe('Tide box 3, now 14:20: coat on 10:00; dry to handle likely 15:30, give it till 16:15; the recoat window opens 14:00 and shuts Wed 03:00; planned 14:35: second varnish.')
+    // 15:31 and 16:12 up to the next 5 min, since what lifts is rounded up; the night end is half a day off: to 15 min.
+    expect(sentence).toBe('Tide box 3, now 14:20: coat on 10:00; dry to handle likely 15:35, give it till 16:15; the recoat window opens 14:00 and shuts Wed 3:00; planned 14:35: second varnish.')
   })
 
   it('says so when nothing is on', () => {
     expect(stripSentence('Lantern 1', { fromAt: nowAt, toAt: nowAt + hour, nowAt, zone: 'UTC', coats: [], milestones: [], windows: [], planned: [] })).toBe('Lantern 1, now 13:20: nothing on it yet.')
   })
+})
+
+it('names an hour, a near day and a far one on the axis', () => {
+  const zone = 'Europe/Berlin'
+  const axis = stripAxis({ fromAt: nowAt, toAt: nowAt + 9 * 24 * hour, nowAt, zone })
+  const words = axisTicks(axis, zone, 0.001).map(tick => tickWords(tick, { now: nowAt, zone: studioZone(zone) }))
+  // Tuesday 14:20: the next hour is 15; Wednesday follows at 6:00; nine days on is 10 December, where a weekday could mean two.
+  expect(words[0]).toBe('15')
+  expect(words).toContain('Wed')
+  expect(words.at(-1)).toBe('10 Dec')
 })

@@ -1,0 +1,28 @@
+import { shellWords } from '#shared/words/shell'
+
+export interface NavigationLink { to: string, label: string }
+
+/** The ways through the product: across the top from a tablet up; on a phone four in thumb reach, the rest under More. */
+export function useNavigation() {
+  const top: NavigationLink[] = [
+    { to: '/board', label: shellWords.board },
+    { to: '/hands', label: shellWords.hands },
+    { to: '/week', label: shellWords.week },
+    { to: '/schedules', label: shellWords.schedules },
+    { to: '/materials', label: shellWords.materials },
+    { to: '/air', label: shellWords.air },
+    { to: '/settings', label: shellWords.settings },
+  ]
+  const thumb: NavigationLink[] = [
+    { to: '/hands', label: shellWords.hands },
+    { to: '/board', label: shellWords.board },
+    { to: '/put-on', label: shellWords.putOn },
+    { to: '/air', label: shellWords.air },
+  ]
+  const more: NavigationLink[] = [
+    { to: '/start', label: shellWords.startBatch },
+    { to: '/sheet', label: shellWords.sheet },
+    ...top.filter(({ to }) => !thumb.some(link => link.to === to)),
+  ]
+  return { top, thumb, more }
+}
