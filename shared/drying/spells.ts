@@ -71,7 +71,7 @@ export function firstDampHalfHour(clock: RoomClock, ceiling: number, from: numbe
   return firstSpell(clock, spellsOf(clock, `damp ${ceiling}`, atCeiling, ceiling), from, 30 * 60_000)
 }
 
-/** Degrees a surface must stay above the dew point for a coat to go on, or to stay on while wet (ISO 8502-4 practice). */
+/** Degrees a surface must stay above the dew point for a coat to go on, or to stay on while wet, a coating inspector's rule. */
 export const dewMarginC = 3
 
 /** First instant from `from` on at which the air is less than 3 degrees above its dew point; Infinity when none comes. */
