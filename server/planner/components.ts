@@ -77,11 +77,13 @@ export function signatures(model: Model, all: readonly Component[]): string[] {
   return all.map((component) => {
     const place = new Map(component.activities.map((activity, i) => [activity, i]))
     const end = (i: number) => i === none ? 'n' : place.get(i) ?? 'f'
-    const rule = (i: number) => `${model.family[i]}:${way(i)}:${model.problem.activities[i]!.mayRunOver}:${model.problem.activities[i]!.splittable}`
-    return JSON.stringify([
-      model.job[component.activities[0]!], component.activities.map(rule),
-      component.lags.map(i => [end(model.lags[i]!.from), end(model.lags[i]!.to)]),
-      component.rests.map(i => [end(model.rests[i]!.from), end(model.rests[i]!.to), [...model.rests[i]!.resources]]),
-    ])
+    let name = `${model.job[component.activities[0]!]}`
+    for (const i of component.activities) {
+      const { mayRunOver, splittable } = model.problem.activities[i]!
+      name += `;${model.family[i]},${way(i)},${mayRunOver},${splittable}`
+    }
+    for (const i of component.lags) name += `;${end(model.lags[i]!.from)}>${end(model.lags[i]!.to)}`
+    for (const i of component.rests) name += `;${end(model.rests[i]!.from)}-${end(model.rests[i]!.to)},${model.rests[i]!.resources.join()}`
+    return name
   })
 }

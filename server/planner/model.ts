@@ -96,11 +96,19 @@ function modesOf(activity: Activity, resources: ReadonlyMap<string, { index: num
   })
 }
 
+/** The same text for activities that ask for the same resources. */
+function asksOf(activity: Activity): string {
+  let key = ''
+  for (const id in activity.uses) key += `${id}\n${activity.uses[id]}\n`
+  for (const choice of activity.choices) key += `?${choice.count}\n${choice.of.join('\n')}`
+  return key
+}
+
 function modesOfAll(problem: PlanProblem): Mode[][] {
   const resources = new Map(problem.resources.map((resource, index) => [resource.id, { index, resource }]))
   const seen = new Map<string, Mode[]>()
   return problem.activities.map((activity) => {
-    const key = JSON.stringify([activity.uses, activity.choices])
+    const key = asksOf(activity)
     const modes = seen.get(key) ?? modesOf(activity, resources, problem.horizon)
     seen.set(key, modes)
     return modes

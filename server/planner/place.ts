@@ -52,6 +52,7 @@ export class Attempt {
     const marks = order.map(() => this.board.mark())
     const first = this.board.mark()
     let pushes = 0
+    let pushed: Cause | null = null
     for (let at = 0; at < order.length;) {
       marks[at] = this.board.mark()
       const step = this.placeNode(order[at]!)
@@ -62,16 +63,22 @@ export class Attempt {
       const tooLate = step.kind === 'later' && (step.from > this.board.model.problem.horizon || ++pushes > mostPushes)
       if (step.kind === 'failed' || tooLate) {
         this.board.undo(first)
-        return { cause: step.cause, blame: step.kind === 'failed' ? this.blame[step.cause.node]! : step.cause }
+        return { cause: step.cause, blame: step.kind === 'failed' ? this.blame[step.cause.node] ?? this.outOfTime(step.cause, pushed) : step.cause }
       }
       this.bound[step.node] = Math.max(this.bound[step.node]!, step.from)
       this.blame[step.node] = step.cause
+      pushed = step.cause
       const back = Math.min(at, order.indexOf(step.node))
       this.board.undo(marks[back]!)
       for (let i = back; i <= at; i++) this.on[order[i]!] = 0
       at = back
     }
     return null
+  }
+
+  /** A node that only ran out of time did so because of the last push before it. */
+  private outOfTime(cause: Cause, pushed: Cause | null): Cause | null {
+    return cause.edge === null && cause.resource === null ? pushed : null
   }
 
   private placeNode(k: number): Step {

@@ -58,6 +58,12 @@ function capacityFit(board: Board, mode: Mode, begin: number, total: number): nu
   return at
 }
 
+/** Of work that may run over, the last member still has to begin in open time. */
+const mustBeOpen = (node: UnitNode, length: number) => {
+  const last = node.starts[node.starts.length - 1]!
+  return last + Math.min(1, length - last)
+}
+
 interface Fit { start: number, length: number }
 
 /** Earliest start of at least `from` in this mode as a session of its own; null when there is none before the horizon. */
@@ -70,7 +76,7 @@ function fitMode(board: Board, node: UnitNode, mode: Mode, from: number, length:
     const workEnd = node.splittable ? pausedEnd(open, i, begin, length) : begin + node.setup + length
     if (workEnd === null || workEnd + node.cleanup > board.model.problem.horizon) return null
     const total = workEnd + node.cleanup - begin
-    const last = node.splittable ? begin + Math.min(1, length) : node.mayRunOver ? begin + node.setup + Math.min(1, length) : begin + total
+    const last = node.splittable ? begin + Math.min(1, length) : node.mayRunOver ? begin + node.setup + mustBeOpen(node, length) : begin + total
     if (last > until) {
       i += 2
       continue
@@ -96,7 +102,7 @@ function fitJoin(board: Board, node: UnitNode, session: Session, from: number, l
   const { open } = session.mode
   const end = workEnd + node.cleanup
   const closes = open[openingAfter(open, session.start) + 1] ?? -1
-  if ((node.mayRunOver ? start + Math.min(1, length) : end) > closes || end > board.model.problem.horizon) return null
+  if ((node.mayRunOver ? start + mustBeOpen(node, length) : end) > closes || end > board.model.problem.horizon) return null
   if (capacityFit(board, session.mode, session.end, end - session.end) !== session.end) return null
   return apartFit(board, node, start, length) === start ? start : null
 }

@@ -4,7 +4,7 @@ import { construct } from './construct'
 import { compile } from './model'
 import { randomFrom } from './random'
 import { byPrevious, byRule, ruleCount, shaken } from './rules'
-import { makeUnits } from './units'
+import { makeUnits, piecesOf } from './units'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 import type { Model } from './model'
 import type { Unit } from './units'
@@ -28,13 +28,19 @@ interface Try { units: Unit[], floors: Int32Array | null }
 function* tries(model: Model): Generator<Try> {
   const { problem } = model
   const divisors = problem.families.length > 0 ? [1, 2, 4, Infinity] : [Infinity]
-  const groupings = divisors.map(divisor => makeUnits(model, divisor))
+  const pieces = piecesOf(model)
+  const made = new Map<number, Unit[]>()
+  const units = (divisor: number) => {
+    const known = made.get(divisor) ?? makeUnits(model, pieces, divisor)
+    made.set(divisor, known)
+    return known
+  }
   if (Object.keys(problem.previous).length > 0) {
     const floors = Int32Array.from(problem.activities, activity => problem.previous[activity.id] ?? 0)
-    for (const units of groupings) yield { units: byPrevious(model, units), floors }
+    for (const divisor of divisors) yield { units: byPrevious(model, units(divisor)), floors }
   }
   for (let rule = 0; rule < ruleCount; rule++) {
-    for (const units of groupings) yield { units: byRule(model, units, rule), floors: null }
+    for (const divisor of divisors) yield { units: byRule(model, units(divisor), rule), floors: null }
   }
 }
 

@@ -61,8 +61,8 @@ function fits(model: Model, node: UnitNode): boolean {
   if (node.members.length === 1) return true
   if (node.splittable) return false
   const family = node.family === none ? null : model.problem.families[node.family]!
-  if (family?.maxMembers != null && node.members.length > family.maxMembers) return false
-  if (family?.maxMinutes != null && node.length > family.maxMinutes) return false
+  if (family && family.maxMembers !== null && node.members.length > family.maxMembers) return false
+  if (family && family.maxMinutes !== null && node.length > family.maxMinutes) return false
   const total = node.setup + node.length + node.cleanup
   return node.modes.some(mode => mode.open.some((to, i) => i % 2 === 1 && to - mode.open[i - 1]! >= total))
 }
@@ -122,7 +122,11 @@ function makeUnit(model: Model, parts: readonly Component[]): Unit | null {
   const rests = parts[0]!.rests.map((first, k): UnitRest => ({
     from: place.get(model.rests[first]!.from) ?? none, to: place.get(model.rests[first]!.to) ?? none, members: parts.map(part => model.rests[part.rests[k]!]!),
   }))
-  const by = <T>(items: readonly T[], node: (item: T) => number) => nodes.map((_, i) => items.filter(item => node(item) === i))
+  const by = <T>(items: readonly T[], node: (item: T) => number) => {
+    const lists: T[][] = nodes.map(() => [])
+    for (const item of items) lists[node(item)]?.push(item)
+    return lists
+  }
   return {
     components: parts, nodes, edges, rests,
     into: by(edges, edge => edge.to), outOf: by(edges, edge => edge.from), restsInto: by(rests, rest => rest.to), restsOutOf: by(rests, rest => rest.from),
@@ -151,23 +155,25 @@ function readiness(model: Model, component: Component): number {
   return component.activities.reduce((latest, activity) => Math.max(latest, model.earliest[activity]!), at)
 }
 
-/**
- * Pieces with the same signature put together, at most `1 / divisor` of them in one unit; Infinity: each piece alone.
- * Pieces without any family go alone: nothing is saved by waiting for each other.
- */
-export function makeUnits(model: Model, divisor: number): Unit[] {
+/** Pieces by signature, those with the earliest windows first; a piece without any family alone: nothing is saved by waiting for another. */
+export function piecesOf(model: Model): Component[][] {
   const all = components(model)
   const names = signatures(model, all)
-  const groups = new Map<string, Component[]>()
+  const groups = new Map<string, { component: Component, at: number }[]>()
   all.forEach((component, i) => {
-    const alone = divisor === Infinity || component.activities.every(activity => model.family[activity] === none)
-    const name = alone ? `${i}` : names[i]!
-    groups.set(name, [...groups.get(name) ?? [], component])
+    const name = component.activities.every(activity => model.family[activity] === none) ? `${i}` : names[i]!
+    const group = groups.get(name) ?? []
+    group.push({ component, at: readiness(model, component) })
+    groups.set(name, group)
   })
-  return [...groups.values()].flatMap((group) => {
-    const sorted = group.map(component => ({ component, at: readiness(model, component) })).sort((a, b) => a.at - b.at).map(item => item.component)
-    const size = Math.max(1, Math.ceil(sorted.length / divisor))
-    const chunks = Array.from({ length: Math.ceil(sorted.length / size) }, (_, i) => sorted.slice(i * size, (i + 1) * size))
+  return [...groups.values()].map(group => group.sort((a, b) => a.at - b.at).map(item => item.component))
+}
+
+/** Like pieces put together, at most `1 / divisor` of them in one unit; Infinity: each piece alone. */
+export function makeUnits(model: Model, pieces: readonly (readonly Component[])[], divisor: number): Unit[] {
+  return pieces.flatMap((group) => {
+    const size = Math.max(1, Math.ceil(group.length / divisor))
+    const chunks = Array.from({ length: Math.ceil(group.length / size) }, (_, i) => group.slice(i * size, (i + 1) * size))
     return chunks.flatMap(chunk => unitsOf(model, chunk))
   })
 }

@@ -119,12 +119,14 @@ function readApart(input: Apart, field: string, { activities }: Known): Apart {
   return input
 }
 
+const optional = (value: number | null | undefined, field: string, least?: number) => value === null || value === undefined ? null : wholeNumber(value, field, least)
+
 function readFamily(input: NonNullable<PlanInput['families']>[number], field: string, { activities }: Known): Family {
   const family: Family = {
     id: input.id, members: input.members, mode: input.mode ?? 'row',
     setup: wholeNumber(input.setup ?? 0, `${field}.setup`, 0), cleanup: wholeNumber(input.cleanup ?? 0, `${field}.cleanup`, 0),
-    maxMembers: input.maxMembers == null ? null : wholeNumber(input.maxMembers, `${field}.maxMembers`, 1),
-    maxMinutes: input.maxMinutes == null ? null : wholeNumber(input.maxMinutes, `${field}.maxMinutes`, 1),
+    maxMembers: optional(input.maxMembers, `${field}.maxMembers`, 1),
+    maxMinutes: optional(input.maxMinutes, `${field}.maxMinutes`, 1),
   }
   let first: string | null = null
   family.members.forEach((id, i) => {
@@ -142,7 +144,7 @@ function readJob(input: NonNullable<PlanInput['jobs']>[number], field: string, {
   input.activities.forEach((id, i) => known(activities, id, `${field}.activities[${i}]`, 'an activity'))
   return {
     id: input.id, activities: input.activities, release: wholeNumber(input.release ?? 0, `${field}.release`),
-    due: input.due == null ? null : wholeNumber(input.due, `${field}.due`), weight: number(input.weight ?? 1, `${field}.weight`, 0),
+    due: optional(input.due, `${field}.due`), weight: number(input.weight ?? 1, `${field}.weight`, 0),
   }
 }
 

@@ -18,6 +18,7 @@ interface Drawn {
   fixed: (number | null)[]
   standing: boolean
   join: boolean
+  twins: number
 }
 
 const step = fc.record({
@@ -25,18 +26,19 @@ const step = fc.record({
   soft: fc.boolean(), rests: fc.boolean(), dusty: fc.boolean(),
 })
 
-const drawn: fc.Arbitrary<Drawn> = fc.record({
+const anyDrawn: fc.Arbitrary<Drawn> = fc.record({
   pieces: fc.array(fc.record({
-    steps: fc.array(step, { minLength: 1, maxLength: 5 }), due: fc.integer({ min: 0, max: 6000 }), weight: fc.integer({ min: 0, max: 5 }), release: fc.integer({ min: 0, max: 2000 }),
-  }), { minLength: 1, maxLength: 5 }),
+    steps: fc.array(step, { minLength: 1, maxLength: 4 }), due: fc.integer({ min: 0, max: 6000 }), weight: fc.integer({ min: 0, max: 5 }), release: fc.integer({ min: 0, max: 2000 }),
+  }), { minLength: 1, maxLength: 4 }),
   hands: fc.integer({ min: 1, max: 3 }), shelf: fc.integer({ min: 1, max: 4 }), setup: fc.integer({ min: 0, max: 30 }), together: fc.boolean(),
-  maxMembers: fc.option(fc.integer({ min: 1, max: 3 })), fixed: fc.array(fc.option(fc.integer({ min: -200, max: 4000 })), { maxLength: 5 }), standing: fc.boolean(), join: fc.boolean(),
+  maxMembers: fc.option(fc.integer({ min: 1, max: 3 })), fixed: fc.array(fc.option(fc.integer({ min: -200, max: 4000 })), { maxLength: 5 }), standing: fc.boolean(), join: fc.boolean(), twins: fc.integer({ min: 1, max: 3 }),
 })
 
 const people = ['ada', 'bo', 'cy']
 
 /** Kinds: 0 pooled hands, 1 any of the people, 2 a family of row or together, 3 may pause overnight, 4 may run over. */
-function inputOf(drawing: Drawn): PlanInput {
+function inputOf(drawn: Drawn): PlanInput {
+  const drawing = { ...drawn, pieces: drawn.pieces.flatMap(piece => Array.from({ length: drawn.twins }, () => piece)) }
   const id = (p: number, s: number) => `p${p}.${s}`
   const steps = drawing.pieces.flatMap((piece, p) => piece.steps.map((item, s) => ({ ...item, id: id(p, s), p, s })))
   const links = steps.filter(item => item.s > 0).map(item => ({ ...item, from: id(item.p, item.s - 1) }))
@@ -61,12 +63,15 @@ function inputOf(drawing: Drawn): PlanInput {
     ],
     families: [{ id: 'coat', setup: drawing.setup, cleanup: 5, mode: drawing.together ? 'together' : 'row', maxMembers: drawing.maxMembers, members: steps.filter(item => item.kind === 2).map(item => item.id) }],
     apart: [{ id: 'room', one: steps.filter(item => item.dusty && item.kind === 0).map(item => ({ activity: item.id, after: 30 })), other: steps.filter(item => item.kind === 2).map(item => ({ activity: item.id, after: 120 })) }],
-    jobs: drawing.pieces.map((piece, p) => ({ id: `job ${p}`, activities: piece.steps.map((_, s) => id(p, s)), due: piece.due, weight: piece.weight, release: piece.release })),
+    jobs: drawn.pieces.map((piece, j) => ({
+      id: `job ${j}`, due: piece.due, weight: piece.weight, release: piece.release,
+      activities: Array.from({ length: drawn.twins }, (_, t) => piece.steps.map((_, s) => id(j * drawn.twins + t, s))).flat(),
+    })),
     fixed: drawing.fixed.flatMap((start, p) => start !== null && p < drawing.pieces.length ? [{ activity: id(p, 0), start }] : []),
     horizon: 12 * 1440,
   }
 }
 
 /** Small problems with every rule in them. */
-export const anyInput: fc.Arbitrary<PlanInput> = drawn.map(inputOf)
+export const anyInput: fc.Arbitrary<PlanInput> = anyDrawn.map(inputOf)
 export const anyProblem: fc.Arbitrary<PlanProblem> = anyInput.map(planProblem)
