@@ -134,7 +134,6 @@ export function libraryFigure(material: LibraryMaterial, name: FigureName): Libr
 
 /** What the drying clock needs of a library material. Minutes, degrees Celsius, shares 0..1, kg/kg. */
 export function dryingMaterial(material: LibraryMaterial): DryingMaterial {
-  const exponent = libraryFigure(material, 'thickness exponent')
   return {
     reference: material.reference,
     minTempC: material.minTempC,
