@@ -31,6 +31,6 @@ export const mitredFrame: LibrarySchedule = {
   links: [
     done('cut', 'glue-up'), strainable('glue-up', 'slot', 'full-strength'), done('slot', 'glue-keys'), done('make-keys', 'glue-keys'), strainable('glue-keys', 'flush', 'full-strength'), done('flush', 'oil-1'),
     sandable('oil-1', 'scuff'), done('scuff', 'oil-2'), inWindow('oil-2', 'oil-3'),
-    recoatable('oil-3', 'fit', 'dry-to-sand-flat'), done('glass', 'fit'), done('fit', 'pack'), strainable('oil-3', 'pack', 'cured'),
+    recoatable('oil-3', 'fit', 'dry-to-sand-flat'), done('glass', 'fit'), done('fit', 'pack'), strainable('oil-3', 'pack', 'dry-to-sand-flat'),
   ],
 }
