@@ -1,0 +1,50 @@
+import { AxeBuilder } from '@axe-core/playwright'
+import { chromium } from 'playwright-core'
+import type { Browser, BrowserContextOptions, Page } from 'playwright-core'
+import { findBrowser } from '../../scripts/ensure.mjs'
+import type { Visitor } from './sign-in'
+
+/** The system's Chromium, quiet: it asks nobody outside for anything. */
+export function openBrowser(): Promise<Browser> {
+  const executablePath = findBrowser()
+  if (!executablePath) throw new Error('There is no Chromium: run node scripts/ensure.mjs browser.')
+  return chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'] })
+}
+
+export interface Watched {
+  page: Page
+  /** Errors and warnings of the console, failed scripts, and addresses outside the server. */
+  problems: string[]
+}
+
+/**
+ * A page of its own context, watched.
+ * @param as somebody signed in over HTTP, whose cookie the browser gets
+ */
+export async function openPage(browser: Browser, origin: string, options: BrowserContextOptions = {}, as?: Visitor): Promise<Watched> {
+  const context = await browser.newContext({ baseURL: origin, viewport: { width: 390, height: 844 }, locale: 'en-GB', timezoneId: 'Europe/London', ...options })
+  if (as) {
+    const [name = '', ...value] = as.cookie().split('=')
+    await context.addCookies([{ name, value: value.join('='), url: origin }])
+  }
+  const page = await context.newPage()
+  const problems: string[] = []
+  page.on('console', message => ['error', 'warning'].includes(message.type()) && problems.push(`${message.type()}: ${message.text()}`))
+  page.on('pageerror', error => problems.push(`script: ${error.message}`))
+  page.on('request', (request) => {
+    if (!request.url().startsWith(origin) && !/^(data|blob):/.test(request.url())) problems.push(`outside: ${request.url()}`)
+  })
+  return { page, problems }
+}
+
+/** Goes to a page and waits until it answers to presses. */
+export async function visit(page: Page, path: string): Promise<void> {
+  await page.goto(path, { waitUntil: 'load' })
+  await page.waitForFunction(() => Boolean((document.querySelector('#__nuxt') as (Element & { __vue_app__?: unknown }) | null)?.__vue_app__))
+}
+
+/** What axe finds wrong, as `rule: element`. */
+export async function axeProblems(page: Page): Promise<string[]> {
+  const { violations } = await new AxeBuilder({ page }).analyze()
+  return violations.flatMap(({ id, nodes }) => nodes.map(({ target }) => `${id}: ${target.join(' ')}`))
+}
