@@ -1,6 +1,8 @@
 // Wiring only: each concern has a file of its own beside this one.
 import { takeOver } from './life'
+import { listenForPush } from './push'
 
 declare const self: ServiceWorkerGlobalScope
 
 takeOver(self)
+listenForPush(self)

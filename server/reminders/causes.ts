@@ -52,7 +52,7 @@ const workOf = ({ first, turns }: Group) => ({ step: first.turnName || first.ste
 
 const callFor = (group: Group) => ({
   subjectType: 'batch' as const, subjectId: group.first.batchId, groupKey: group.key, repeat: group.failedTests,
-  path: `/hands?turn=${group.first.turnId}`,
+  path: `/hands?turn=${group.first.turnId}${group.first.stepKind === 'coat' && group.first.kind === 'work' ? '&act=coat' : ''}`,
 })
 
 /** The last moment to start them all, and then the last moment for as many as could still be done. */

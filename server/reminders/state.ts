@@ -1,7 +1,7 @@
 import { and, eq, isNull, sql } from 'drizzle-orm'
 import { closure, openHours, ragDuty, room, studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
-import type { TurnKind } from '#shared/terms'
+import type { StepKind, TurnKind } from '#shared/terms'
 import { startOfLocalDay, studioZone } from '#shared/time'
 import type { StudioZone } from '#shared/time'
 import type { StudioHours } from './hours'
@@ -16,6 +16,7 @@ export interface PlannedTurn {
   stepId: number
   stepKey: string
   stepName: string
+  stepKind: StepKind
   ordinal: number
   kind: TurnKind
   turnName: string
@@ -82,7 +83,7 @@ function readTurns(db: Database, studioId: number, now: number): PlannedTurn[] {
   const until = now + horizonMs
   const rows = db.all<TurnRow>(sql`
     select e.turn_id as turnId, e.session_id as sessionId, p.batch_id as batchId, b.name as batchName, p.branch_id as branchId,
-      s.id as stepId, s.key as stepKey, s.name as stepName, t.ordinal, t.kind, t.name as turnName, p.name as pieceName,
+      s.id as stepId, s.key as stepKey, s.name as stepName, s.kind as stepKind, t.ordinal, t.kind, t.name as turnName, p.name as pieceName,
       e.due_at as dueAt, e.last_start_at as lastStartAt, e.first_few as firstFew, e.last_start_few_at as lastStartFewAt, e.after_test as afterTest
     from plan pl join plan_entry e on e.plan_id = pl.id join turn t on t.id = e.turn_id join piece_step s on s.id = t.step_id
       join piece p on p.id = s.piece_id join batch b on b.id = p.batch_id

@@ -43,6 +43,14 @@ export const callWords = {
     answeredAlready: 'Somebody has answered for these rags already.',
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
   },
+  notification: {
+    coatOn: 'Coat is on',
+    stillTacky: 'Still tacky',
+    flatOutdoors: 'Flat outdoors',
+    inWaterCan: 'In the water can',
+    unreadableTitle: 'A call from the studio',
+    unreadableBody: 'It could not be read here. Look at the board.',
+  },
   delivery: {
     notNeeded: 'It was no longer needed before it could be sent.',
     nobodyThere: 'Nobody listens there any more.',
