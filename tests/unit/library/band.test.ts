@@ -1,16 +1,16 @@
 import { describe, expect, it } from 'vitest'
-import { airTables } from '#shared/air/tables'
 import { roomClock } from '#shared/drying/clock'
 import type { RoomClock } from '#shared/drying/clock'
 import { prepareMaterial } from '#shared/drying/material'
 import { predictCoat } from '#shared/drying/predict'
+import { dryingTools } from '#shared/drying/tools'
 import type { Air } from '#shared/drying/types'
 import { findLibraryMaterial, libraryMaterials } from '#shared/library/index'
 import { dryingMaterial } from '#shared/library/types'
 import type { LibraryMaterial } from '#shared/library/types'
 
 const day = 86_400_000
-const tools = { air: airTables(), zones: new Map() }
+const tools = dryingTools()
 const clocks = new Map<string, RoomClock>()
 
 /** A heated room that keeps one climate and has readings to the end; each climate is built once. */
@@ -25,7 +25,7 @@ function steadyRoom(air: Air): RoomClock {
 function atReference(material: LibraryMaterial) {
   const drying = dryingMaterial(material)
   const coat = { appliedAt: 0, size: 'normal' as const, ground: 'primed' as const }
-  return predictCoat(prepareMaterial(drying, tools.air), coat, [{ clock: steadyRoom(drying.reference), fromAt: 0, toAt: null }], { now: 0 })
+  return predictCoat(prepareMaterial(drying, tools), coat, [{ clock: steadyRoom(drying.reference), fromAt: 0, toAt: null }], { now: 0 })
 }
 const minutes = (at: number | null) => at === null ? Infinity : at / 60_000
 
