@@ -86,7 +86,7 @@ function weigh({ fromAt, toAt, night }: Stretch, nowAt: number, clock: WallClock
 const dayNumber = ({ year, month, day }: Wall) => Date.UTC(year, month - 1, day) / (1440 * minute)
 
 function placeOn(segments: readonly AxisSegment[], at: number): number {
-  if (at <= segments[0]!.fromAt) return 0
+  if (at <= (segments[0]?.fromAt ?? at)) return 0
   const segment = segments.find(({ toAt }) => at < toAt)
   if (!segment) return 1
   return segment.start + (at - segment.fromAt) / (segment.toAt - segment.fromAt) * (segment.end - segment.start)
@@ -132,19 +132,23 @@ export interface LabelPlace { row: number, side: 'right' | 'left' }
 
 /**
  * Stagger labels over rows so that none covers another; null where no row is free (the mark stays, the word is left out).
+ * Row 0 is next to the marks. The latest is placed first, so that the stem of an earlier one, further out, crosses no label.
  * A label stands to the right of its mark, to the left where it would leave the strip.
  */
 export function staggerLabels(wishes: readonly LabelWish[], rows: number): (LabelPlace | null)[] {
-  const taken: { start: number, end: number }[][] = Array.from({ length: rows }, () => [])
-  const order = wishes.map((_, index) => index).sort((a, b) => wishes[a]!.x - wishes[b]!.x)
+  const taken: { start: number, end: number, x: number, row: number }[] = []
   const places: (LabelPlace | null)[] = wishes.map(() => null)
-  for (const index of order) {
-    const { x, width } = wishes[index]!
+  const latestFirst = [...wishes.entries()].sort(([, a], [, b]) => b.x - a.x)
+  for (const [index, { x, width }] of latestFirst) {
     const side = x + width > 1 && x - width >= 0 ? 'left' : 'right'
     const start = side === 'right' ? x : x - width
-    const row = taken.findIndex(row => row.every(label => start >= label.end || start + width <= label.start))
-    if (row === -1) continue
-    taken[row]!.push({ start, end: start + width })
+    const end = start + width
+    // In its own row no label may be met, in a row further out no stem on its way down to the marks.
+    const free = (row: number) => taken.every(other =>
+      other.row < row || (other.row === row ? start >= other.end || end <= other.start : other.x <= start || other.x >= end))
+    const row = Array.from({ length: rows }, (_, index) => index).find(free)
+    if (row === undefined) continue
+    taken.push({ start, end, x, row })
     places[index] = { row, side }
   }
   return places

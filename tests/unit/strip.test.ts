@@ -81,9 +81,15 @@ describe('labels', () => {
     expect(staggerLabels([{ x: 0, width: 0.2 }, { x: 0.3, width: 0.2 }], 2)).toEqual([{ row: 0, side: 'right' }, { row: 0, side: 'right' }])
   })
 
-  it('step down when they would, and are left out when no row is free', () => {
+  it('step outward when they would, the earliest furthest, and are left out when no row is free', () => {
     const wishes = [{ x: 0.1, width: 0.3 }, { x: 0.2, width: 0.3 }, { x: 0.25, width: 0.3 }]
-    expect(staggerLabels(wishes, 2)).toEqual([{ row: 0, side: 'right' }, { row: 1, side: 'right' }, null])
+    expect(staggerLabels(wishes, 2)).toEqual([null, { row: 1, side: 'right' }, { row: 0, side: 'right' }])
+  })
+
+  it('let no stem run through a label', () => {
+    // The last turns left over the middle one, which steps out; the first would fit below it, but for the stem at 0.5.
+    const wishes = [{ x: 0.3, width: 0.3 }, { x: 0.5, width: 0.3 }, { x: 0.95, width: 0.3 }]
+    expect(staggerLabels(wishes, 3).map(place => place?.row)).toEqual([2, 1, 0])
   })
 
   it('turn to the left at the far end', () => {
