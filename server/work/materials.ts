@@ -4,7 +4,7 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { prepareMaterial } from '#shared/drying/material'
 import type { PreparedMaterial } from '#shared/drying/material'
-import type { DryingTools } from '#shared/drying/clock'
+import type { DryingTools } from '#shared/drying/tools'
 import type { DryingMaterial } from '#shared/drying/types'
 
 /** What the drying clock needs of some material editions, by edition. Minutes, degrees Celsius, shares 0..1. */
@@ -33,7 +33,7 @@ export class PreparedMaterials {
 
   prepare(material: DryingMaterial): PreparedMaterial {
     const key = JSON.stringify(material)
-    const kept = this.#kept.get(key) ?? prepareMaterial(material, this.tools.air)
+    const kept = this.#kept.get(key) ?? prepareMaterial(material, this.tools)
     this.#kept.set(key, kept)
     return kept
   }

@@ -5,18 +5,18 @@ import { scoped } from '~~/server/utils/scoped'
 import { airOf, roomAirs } from '~~/server/work/air'
 import { dryingMaterials, PreparedMaterials } from '~~/server/work/materials'
 import { storePredictions } from '~~/server/work/store-predictions'
-import { airTables } from '#shared/air/tables'
 import { roomClock } from '#shared/drying/clock'
-import type { DryingTools, RoomClock } from '#shared/drying/clock'
+import type { RoomClock } from '#shared/drying/clock'
 import type { AirSpan } from '#shared/drying/ladder'
 import { predictCoat } from '#shared/drying/predict'
+import { dryingTools } from '#shared/drying/tools'
 import type { CoatCase, CoatPrediction, RoomAir } from '#shared/drying/types'
 
 type CoatRow = typeof coat.$inferSelect
 type Reader = Database | Transaction
 
 /** Tables that depend on no reading, built once for the process: the warm start of every prediction. */
-const prepared = new PreparedMaterials({ air: airTables(), zones: new Map() } satisfies DryingTools)
+const prepared = new PreparedMaterials(dryingTools())
 
 export interface PredictedCoat { coat: CoatRow, prediction: CoatPrediction }
 

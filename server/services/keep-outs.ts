@@ -1,0 +1,31 @@
+import { eq, isNull } from 'drizzle-orm'
+import { keepOut, room } from '~~/db/schema'
+import { memberNames } from '~~/server/services/member-names'
+import type { Membership } from '~~/server/services/sessions'
+import { change } from '~~/server/utils/change'
+import type { Database } from '~~/server/utils/database'
+import { absent, conflict, notAllowed } from '~~/server/utils/errors'
+import type { Refusal } from '~~/server/utils/errors'
+import { owned, scoped } from '~~/server/utils/scoped'
+import { insertAct } from '~~/server/work/record'
+import { may } from '#shared/permissions'
+import { roomWords } from '#shared/words/rooms'
+
+/**
+ * A named person has looked at a room that was shut and lets the others in again: an act, and the end of the keep-out.
+ * The one who shut it may, and every owner; another maker is told whom to ask. Time alone never opens a room.
+ */
+export function openRoom(db: Database, studioId: number, who: Membership, roomId: number, now: number): { ok: true } | Refusal {
+  return change(db, studioId, 'work', (tx): { ok: true } | Refusal => {
+    const named = tx.select({ name: room.name }).from(room).where(owned(room, studioId, roomId)).get()
+    if (!named) return absent()
+    if (!may(who.role, 'start batches')) return notAllowed(roomWords.makersOnly)
+    const shut = tx.select().from(keepOut).where(scoped(keepOut, studioId, eq(keepOut.roomId, roomId), isNull(keepOut.openedAt))).get()
+    if (!shut) return conflict(roomWords.isOpen(named.name))
+    const opener = shut.opensByMemberId
+    if (opener !== null && opener !== who.id && who.role !== 'owner') return notAllowed(roomWords.opensBy(named.name, memberNames(db, studioId).get(opener) ?? ''))
+    const actId = insertAct(tx, studioId, { clientKey: `open room ${shut.id}`, kind: 'room opened', doneAt: now, toldAt: now, acting: { actor: 'member', memberId: who.id }, body: { roomId, keepOutId: shut.id }, subjects: [] })
+    tx.update(keepOut).set({ openedActId: actId, openedAt: now }).where(owned(keepOut, studioId, shut.id)).run()
+    return { ok: true }
+  })
+}

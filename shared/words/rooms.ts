@@ -1,0 +1,11 @@
+/** What is said about a room that nobody enters until a named person opens it. */
+export const roomWords = {
+  makersOnly: 'A maker or an owner opens a room that was shut.',
+  isOpen: (room: string) => `${room} is not shut any more.`,
+  opensBy: (room: string, name: string) => name === '' ? `${room} is opened by an owner.` : `${room} is opened by ${name} or an owner. Ask first.`,
+  shut: (room: string) => `Keep out of ${room}`,
+  since: (time: string, name: string | null) => name === null ? `Shut since ${time}. A maker opens it.` : `Shut since ${time}. ${name} opens it, or an owner.`,
+  open: (room: string) => `Open ${room}`,
+  ask: 'Open it only after looking in yourself, with the exhaust run as the product’s data sheet and local rules ask.',
+  opened: (room: string) => `${room} is open again.`,
+} as const
