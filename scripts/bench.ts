@@ -1,7 +1,8 @@
 import { cpus } from 'node:os'
+import { benchPlanner } from './bench/planner'
 import { benchPredict } from './bench/predict'
 
-const benches: Record<string, () => string[] | Promise<string[]>> = { predict: benchPredict }
+const benches: Record<string, () => string[] | Promise<string[]>> = { planner: benchPlanner, predict: benchPredict }
 
 const usage = `npm run bench [-- NAME ...]
 

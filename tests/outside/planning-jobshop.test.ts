@@ -36,8 +36,8 @@ function jobShop(rows: readonly number[][]): PlanProblem {
 describe('a published job shop', () => {
   const problem = jobShop(ft06)
 
-  it('is typed as printed: the longest job takes 47 minutes, the busiest machine 43', () => {
-    // Job 2: 8 + 5 + 10 + 10 + 10 + 4 = 47. Machine 5: 3 + 10 + 8 + 9 + 4 + 9 = 43.
+  it('is typed as printed: the longest job takes 47 minutes, the last machine works 43', () => {
+    // The second job: 8 + 5 + 10 + 10 + 10 + 4 = 47. The machine numbered 5, by job: 3 + 10 + 8 + 9 + 4 + 9 = 43.
     const sum = (of: (id: string) => boolean) => problem.activities.filter(({ id }) => of(id)).reduce((all, { minutes }) => all + minutes, 0)
     expect(sum(id => id.startsWith('1.'))).toBe(47)
     expect(problem.activities.filter(({ uses }) => uses['5'] === 1).reduce((all, { minutes }) => all + minutes, 0)).toBe(43)

@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { planProblem } from '#shared/planning/problem'
 import type { PlanInput } from '#shared/planning/problem'
-import type { Interval, PlanProblem } from '#shared/planning/types'
+import type { Interval, PlanProblem, Uses } from '#shared/planning/types'
 
 /** Nine to five for so many days, minute 0 at midnight. */
 export const weekdays = (days: number): Interval[] => Array.from({ length: days }, (_, day) => [day * 1440 + 540, day * 1440 + 1020] as const)
@@ -34,6 +34,7 @@ const anyDrawn: fc.Arbitrary<Drawn> = fc.record({
   maxMembers: fc.option(fc.integer({ min: 1, max: 3 })), fixed: fc.array(fc.option(fc.integer({ min: -200, max: 4000 })), { maxLength: 5 }), standing: fc.boolean(), join: fc.boolean(), twins: fc.integer({ min: 1, max: 3 }),
 })
 
+const none: Uses = {}
 const people = ['ada', 'bo', 'cy']
 
 /** Kinds: 0 pooled hands, 1 any of the people, 2 a family of row or together, 3 may pause overnight, 4 may run over. */
@@ -50,7 +51,7 @@ function inputOf(drawn: Drawn): PlanInput {
       { id: 'shelf', capacity: drawing.shelf },
     ],
     activities: steps.map(item => ({
-      id: item.id, minutes: item.minutes, splittable: item.kind === 3, mayRunOver: item.kind === 4, uses: item.kind === 1 || item.kind === 2 ? {} : { hands: 1 },
+      id: item.id, minutes: item.minutes, splittable: item.kind === 3, mayRunOver: item.kind === 4, uses: item.kind === 1 || item.kind === 2 ? none : { hands: 1 },
       choices: item.kind === 1 || item.kind === 2 ? [{ of: people, count: 1 }] : [],
     })),
     lags: [

@@ -120,20 +120,20 @@ describe('together and apart', () => {
   })
 
   it('begins the next row so that every member has waited', () => {
-    // First row 0-60 (20 each); the second takes 5 each and each must have waited 100: the last may begin at 160, so the row begins at 150, not at 120.
+    // 15 set-up, first row 15-75 (20 each). The second row takes 5 each, and each must have waited 100: the last begins at 175, so the first at 165, its set-up at 150.
     const rows = ['a', 'b', 'c']
     const plan = planned({
       resources: [hands], activities: rows.flatMap(id => [{ id: `${id}1`, minutes: 20, uses: { hands: 1 } }, { id: `${id}2`, minutes: 5, uses: { hands: 1 } }]),
       lags: rows.map(id => ({ from: `${id}1`, to: `${id}2`, min: 100 })), families: ['1', '2'].map(step => ({ id: step, setup: 15, members: rows.map(id => id + step) })),
     }, 1)
-    expect(plan.sessions.map(({ start, end }) => [start, end])).toEqual([[0, 75], [150, 180]].map(([start, end]) => [start, end]))
+    expect(plan.sessions.map(({ start, end }) => [start, end])).toEqual([[0, 75], [150, 180]])
   })
 
   it('splits a row that would overrun a window', () => {
     // Row one: 3 x 100. Row two: 3 x 10, each within 60 of its own first: in one row the first would have waited 180. So no session of three in step two.
     const rows = ['a', 'b', 'c']
     const plan = planned({
-      resources: [hands, { id: 'bench', capacity: 1 }], activities: rows.flatMap(id => [{ id: `${id}1`, minutes: 100, uses: { hands: 1 } }, { id: `${id}2`, minutes: 10, uses: { bench: 1 } }]),
+      resources: [hands, { id: 'bench', capacity: 1 }], activities: rows.flatMap((id): PlanInput['activities'] => [{ id: `${id}1`, minutes: 100, uses: { hands: 1 } }, { id: `${id}2`, minutes: 10, uses: { bench: 1 } }]),
       lags: rows.map(id => ({ from: `${id}1`, to: `${id}2`, max: 60 })), families: ['1', '2'].map(step => ({ id: step, setup: 5, members: rows.map(id => id + step) })),
     })
     expect(plan.objective.windowsMissed).toBe(0)
