@@ -3,20 +3,16 @@ import { airNote, coat, coatTarget, part, place, prediction, stay, studio, touch
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { airOf, roomAirs } from '~~/server/work/air'
-import { dryingMaterials, PreparedMaterials } from '~~/server/work/materials'
+import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { storePredictions } from '~~/server/work/store-predictions'
 import { roomClock } from '#shared/drying/clock'
 import type { RoomClock } from '#shared/drying/clock'
 import type { AirSpan } from '#shared/drying/ladder'
 import { predictCoat } from '#shared/drying/predict'
-import { dryingTools } from '#shared/drying/tools'
 import type { CoatCase, CoatPrediction, RoomAir } from '#shared/drying/types'
 
 type CoatRow = typeof coat.$inferSelect
 type Reader = Database | Transaction
-
-/** Tables that depend on no reading, built once for the process: the warm start of every prediction. */
-const prepared = new PreparedMaterials(dryingTools())
 
 export interface PredictedCoat { coat: CoatRow, prediction: CoatPrediction }
 
@@ -42,7 +38,7 @@ export function predictFilms(db: Reader, studioId: number, pieceIds: readonly nu
   return coats.flatMap((row) => {
     const material = row.materialVersionId === null ? undefined : materials.get(row.materialVersionId)
     if (!material) return []
-    return [{ coat: row, prediction: predictCoat(prepared.prepare(material), caseOf(row, facts), spansOf(row, facts, clockOf), { now }) }]
+    return [{ coat: row, prediction: predictCoat(preparedMaterials.prepare(material), caseOf(row, facts), spansOf(row, facts, clockOf), { now }) }]
   })
 }
 
@@ -107,7 +103,7 @@ function spansOf(row: CoatRow, facts: Facts, clockOf: (roomId: number | null) =>
 function clocks(airs: ReadonlyMap<number, RoomAir>, unknown: RoomAir, since: number) {
   const built = new Map<number | null, RoomClock>()
   return (roomId: number | null): RoomClock => {
-    const known = built.get(roomId) ?? roomClock((roomId === null ? undefined : airs.get(roomId)) ?? unknown, since, prepared.tools)
+    const known = built.get(roomId) ?? roomClock((roomId === null ? undefined : airs.get(roomId)) ?? unknown, since, preparedMaterials.tools)
     built.set(roomId, known)
     return known
   }

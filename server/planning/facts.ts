@@ -1,0 +1,58 @@
+import { and, asc, eq, isNull, sql } from 'drizzle-orm'
+import { batch, closure, coat, member, memberStepKind, openHours, order, part, piece, pieceStep, pin, place, plan, planEntry, prediction, recoatWindow, stay, stepLink, stepTarget, studio, turn, windowPrediction } from '~~/db/schema'
+import type { Database } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+
+/** Statuses of steps that a plan has to do with. */
+const open = ['waiting', 'doing', 'resting'] as const
+
+/** All that a plan is made from, read in one go: work that is left, what it waits for, hands, places and the last plan. */
+export function readPlanFacts(db: Database, studioId: number) {
+  const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
+  if (!owner) return null
+  const here = and(isNull(piece.goneAt), isNull(batch.closedAt))
+  const pieces = db.select({ id: piece.id, batchId: piece.batchId, sizeUnits: piece.sizeUnits, dueAt: order.dueAt, weight: order.weight })
+    .from(piece).innerJoin(batch, eq(batch.id, piece.batchId)).leftJoin(order, eq(order.id, batch.orderId)).where(scoped(piece, studioId, here)).orderBy(asc(piece.id)).all()
+  const openSteps = scoped(pieceStep, studioId, sql`${pieceStep.status} in ('waiting', 'doing', 'resting', 'set aside')`)
+  const steps = db.select({ step: pieceStep }).from(pieceStep).innerJoin(piece, eq(piece.id, pieceStep.pieceId)).innerJoin(batch, eq(batch.id, piece.batchId))
+    .where(and(openSteps, here)).orderBy(asc(pieceStep.pieceId), asc(pieceStep.ordinal)).all().map(row => row.step)
+  const turns = db.select({ turn }).from(pieceStep).innerJoin(turn, eq(turn.stepId, pieceStep.id))
+    .where(and(openSteps, sql`${turn.status} in ('waiting', 'doing')`)).orderBy(asc(turn.stepId), asc(turn.ordinal)).all().map(row => row.turn)
+  const links = db.select({ link: stepLink }).from(pieceStep).innerJoin(stepLink, eq(stepLink.toStepId, pieceStep.id)).where(openSteps).all().map(row => row.link)
+  const targets = db.selectDistinct({ stepId: stepTarget.stepId, partId: stepTarget.partId }).from(pieceStep).innerJoin(stepTarget, eq(stepTarget.stepId, pieceStep.id)).where(openSteps).all()
+  return { owner, pieces, steps: steps.filter(step => open.some(status => status === step.status)), aside: new Set(steps.filter(step => step.status === 'set aside').map(step => step.id)), turns, links, targets, ...readFilms(db, studioId), ...readHands(db, studioId), ...readLast(db, studioId) }
+}
+export type PlanFacts = NonNullable<ReturnType<typeof readPlanFacts>>
+
+/** The newest live film of each step with its times: what the next step waits for. */
+function readFilms(db: Database, studioId: number) {
+  const live = scoped(coat, studioId, isNull(coat.settledAt), isNull(coat.strippedAt))
+  const films = db.select({ coatId: coat.id, stepId: turn.stepId, versionId: coat.materialVersionId, endedAt: coat.endedAt }).from(coat).innerJoin(turn, eq(turn.id, coat.turnId)).where(live).orderBy(asc(coat.endedAt)).all()
+  const rungs = db.select({ prediction }).from(coat).innerJoin(prediction, eq(prediction.coatId, coat.id)).where(live).orderBy(asc(prediction.ordinal)).all().map(row => row.prediction)
+  const windows = db.select({ window: windowPrediction }).from(coat).innerJoin(windowPrediction, eq(windowPrediction.coatId, coat.id)).where(live).orderBy(asc(windowPrediction.ordinal)).all().map(row => row.window)
+  const recoveries = db.select({ versionId: recoatWindow.versionId, name: recoatWindow.recovery, minutes: recoatWindow.recoveryMin }).from(recoatWindow).where(scoped(recoatWindow, studioId)).all()
+  return { films, rungs, windows, recoveries }
+}
+
+function readHands(db: Database, studioId: number) {
+  const members = db.select({ id: member.id, role: member.role }).from(member).where(scoped(member, studioId, isNull(member.leftAt))).orderBy(asc(member.id)).all()
+  const kinds = db.select({ memberId: memberStepKind.memberId, kind: memberStepKind.kind }).from(memberStepKind).where(scoped(memberStepKind, studioId)).all()
+  const hours = db.select().from(openHours).where(scoped(openHours, studioId)).all()
+  const closures = db.select().from(closure).where(scoped(closure, studioId)).all()
+  const places = db.select().from(place).where(scoped(place, studioId)).orderBy(asc(place.sort), asc(place.id)).all()
+  const stays = db.select({ partId: stay.partId, pieceId: part.pieceId, placeId: stay.placeId, roomId: place.roomId }).from(stay).innerJoin(place, eq(place.id, stay.placeId)).innerJoin(part, eq(part.id, stay.partId))
+    .where(scoped(stay, studioId, isNull(stay.toAt))).all()
+  return { members, kinds, hours, closures, places, stays }
+}
+
+function readLast(db: Database, studioId: number) {
+  const last = db.select({ entry: planEntry }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).where(scoped(plan, studioId, sql`${plan.current} = 1`)).all().map(row => row.entry)
+  const pins = db.select().from(pin).where(scoped(pin, studioId)).all()
+  return { last, pins }
+}
+
+/** The material editions that coats to come will need times for. */
+export function materialsToCome(facts: PlanFacts): number[] {
+  return [...new Set(facts.steps.flatMap(step => step.materialVersionId ?? []))]
+}
+

@@ -1,0 +1,30 @@
+import type { PlanFacts } from '~~/server/planning/facts'
+import { openSpans } from '#shared/open-hours'
+import { mayDoStep } from '#shared/permissions'
+import type { Interval } from '#shared/planning/types'
+import type { StepKind } from '#shared/terms'
+import type { StudioZone } from '#shared/time'
+
+const minute = 60_000
+
+/** A pair of hands: a member in their own hours, or in the studio's where they keep none of their own. Minutes from `zeroAt`. */
+export interface Hands { id: string, memberId: number, open: Interval[], may: (kind: StepKind) => boolean }
+
+export const handsId = (memberId: number) => `m${memberId}`
+
+/** Everybody who can do steps, with when they work between two instants (ms UTC). */
+export function handsOf(facts: PlanFacts, zone: StudioZone, zeroAt: number, untilAt: number): Hands[] {
+  const studioHours = facts.hours.filter(each => each.memberId === null)
+  const studioClosed = facts.closures.filter(each => each.memberId === null)
+  return facts.members.map(({ id, role }) => {
+    const own = facts.hours.filter(each => each.memberId === id)
+    const closed = [...studioClosed, ...facts.closures.filter(each => each.memberId === id)]
+    const spans = openSpans({ open: own.length > 0 ? own : studioHours, closed }, zone, zeroAt, untilAt)
+    const kinds = facts.kinds.filter(each => each.memberId === id).map(each => each.kind)
+    return {
+      id: handsId(id), memberId: id,
+      open: spans.map(span => [Math.max(0, Math.ceil((span.fromAt - zeroAt) / minute)), Math.floor((span.toAt - zeroAt) / minute)] as const).filter(([from, to]) => to > from),
+      may: kind => mayDoStep(role, kinds, kind),
+    }
+  })
+}

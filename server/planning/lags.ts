@@ -1,0 +1,128 @@
+import { minutesFrom, reachedAt, rungFor } from '~~/server/planning/waits'
+import type { WaitsToCome } from '~~/server/planning/waits'
+import type { PlanFacts } from '~~/server/planning/facts'
+import type { PlanInput } from '#shared/planning/problem'
+import type { LagWindow, Recovery } from '#shared/planning/types'
+import type { MilestoneName, Risk } from '#shared/terms'
+
+type Step = PlanFacts['steps'][number]
+type TurnRow = PlanFacts['turns'][number]
+export type LagInput = NonNullable<PlanInput['lags']>[number]
+
+/** What a missed window costs before the recovery's own minutes, in the objective (planning value). */
+const missed = 1
+/** Coats of a later day of a round wait at least a night (planning value). */
+const aNight = 12 * 60
+
+export const activityId = (turnId: number) => `t${turnId}`
+
+export interface StepWork { step: Step, turns: TurnRow[], roomId: number | null }
+
+/** What a piece's open turns wait for, and which of them only a touch test can let begin. */
+export interface LagsOfPiece { lags: LagInput[], untested: Set<number>, unreachable: Set<number> }
+
+/** Turns the links of one piece into lags between its turns, with films that lie already as fixed moments. */
+export function lagsOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, zeroAt: number): LagsOfPiece {
+  const found: LagsOfPiece = { lags: [], untested: new Set(), unreachable: new Set() }
+  const byStep = new Map(works.map(work => [work.step.id, work]))
+  for (const work of works) {
+    inside(found, work, facts, toCome, zeroAt)
+    for (const link of facts.links.filter(each => each.toStepId === work.step.id)) {
+      const first = firstWork(work)
+      if (!first) continue
+      const before = byStep.get(link.fromStepId)
+      if (facts.aside.has(link.fromStepId)) found.unreachable.add(first.id)
+      else if (before && lastTurn(before)) between(found, before, first, link, facts, toCome)
+      else lying(found, link.fromStepId, first, link, facts, zeroAt)
+    }
+  }
+  return found
+}
+
+const firstWork = (work: StepWork) => work.turns.find(turn => turn.kind === 'work') ?? null
+const lastTurn = (work: StepWork) => work.turns[work.turns.length - 1] ?? null
+
+interface Asked { milestone: MilestoneName | null, risk: Risk, windowed: boolean }
+
+/** From a step that is still to be done. */
+function between(found: LagsOfPiece, before: StepWork, first: TurnRow, link: Asked, facts: PlanFacts, toCome: WaitsToCome) {
+  for (const turn of before.turns) if (turn.kind !== 'work' || link.milestone === null) found.lags.push({ from: activityId(turn.id), to: activityId(first.id), min: 0 })
+  const coat = [...before.turns].reverse().find(turn => turn.kind === 'work')
+  if (link.milestone === null || !coat) return
+  const { minutes, promised, windows } = toCome.wait(before.step, before.roomId, link.milestone, link.risk, link.windowed)
+  add(found, first, activityId(coat.id), minutes, promised, windows, recoveryOf(before.step.materialVersionId, facts))
+}
+
+/** From a film that lies already: its times are instants. */
+function lying(found: LagsOfPiece, fromStepId: number, first: TurnRow, link: Asked, facts: PlanFacts, zeroAt: number) {
+  const film = facts.films.filter(each => each.stepId === fromStepId).at(-1)
+  if (!film || link.milestone === null) return
+  const rung = rungFor(facts.rungs.filter(each => each.coatId === film.coatId).map(each => ({ ...each, name: each.milestone })), link.milestone)
+  if (!rung) return
+  const { at, promised } = reachedAt(rung, link.risk, film.endedAt)
+  const windows = link.windowed ? facts.windows.filter(each => each.coatId === film.coatId).flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(zeroAt, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(zeroAt, shutsAt, Math.floor)]])) : []
+  add(found, first, null, at === null ? null : minutesFrom(zeroAt, at, Math.ceil), promised, windows, recoveryOf(film.versionId, facts))
+}
+
+/** Inside one step: the coats of a round, the looks inside a rest, the release from clamps. */
+function inside(found: LagsOfPiece, work: StepWork, facts: PlanFacts, toCome: WaitsToCome, zeroAt: number) {
+  const coats = work.turns.filter(turn => turn.kind === 'work')
+  const again: Asked = { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }
+  const first = coats[0]
+  if (first && work.step.status === 'resting') lying(found, work.step.id, first, again, facts, zeroAt)
+  for (const [index, coat] of coats.entries()) {
+    const before = coats[index - 1]
+    if (!before) continue
+    const { minutes, promised, windows } = toCome.wait(work.step, work.roomId, 'ready-to-recoat', 'p90', true)
+    const overnight = coat.day > before.day ? aNight : 0
+    add(found, coat, activityId(before.id), minutes === null ? null : Math.max(minutes, overnight), promised, windows, recoveryOf(work.step.materialVersionId, facts))
+  }
+  const last = coats[coats.length - 1]
+  for (const turn of work.turns) {
+    if (turn.kind === 'check') rest(found, turn, last ?? null, turn.checkAfterMin ?? 0, work, facts, zeroAt)
+    else if (turn.kind === 'release' && last) {
+      const { minutes, promised } = toCome.wait(work.step, work.roomId, 'out-of-clamps', 'p90', false)
+      add(found, turn, activityId(last.id), minutes, promised, [], null)
+    }
+    else if (turn.kind === 'release') lying(found, work.step.id, turn, { milestone: 'out-of-clamps', risk: 'p90', windowed: false }, facts, zeroAt)
+  }
+}
+
+function rest(found: LagsOfPiece, turn: TurnRow, after: TurnRow | null, minutes: number, work: StepWork, facts: PlanFacts, zeroAt: number) {
+  if (after) found.lags.push({ from: activityId(after.id), to: activityId(turn.id), min: minutes })
+  const film = facts.films.filter(each => each.stepId === work.step.id).at(-1)
+  if (!after && film) found.lags.push({ from: null, to: activityId(turn.id), min: Math.max(0, minutesFrom(zeroAt, film.endedAt, Math.ceil) + minutes) })
+}
+
+function add(found: LagsOfPiece, to: TurnRow, from: string | null, minutes: number | null, promised: boolean, windows: readonly LagWindow[], recovery: Recovery | null) {
+  if (!promised) found.untested.add(to.id)
+  if (minutes === null) {
+    found.unreachable.add(to.id)
+    return
+  }
+  const least = from === null ? Math.max(0, minutes) : minutes
+  const chances = windows.flatMap(([opens, shuts]): LagWindow[] => {
+    // A window open from the start may be used before the rung that others wait for.
+    const begins = Math.max(opens <= 0 ? Math.max(0, opens) : Math.max(opens, least), 0)
+    return shuts === null || shuts >= begins ? [[begins, shuts]] : []
+  })
+  if (windows.length === 0) found.lags.push({ from, to: activityId(to.id), min: least })
+  else if (chances.length > 0) found.lags.push({ from, to: activityId(to.id), windows: apart(chances), recovery: recovery ?? { penalty: missed, minutes: 0 } })
+  else found.lags.push({ from, to: activityId(to.id), min: least })
+}
+
+/** Sorted and joined where they overlap, as the planner asks for them. */
+function apart(windows: LagWindow[]): LagWindow[] {
+  const joined: [number, number | null][] = []
+  for (const [from, to] of [...windows].sort((a, b) => a[0] - b[0])) {
+    const last = joined[joined.length - 1]
+    if (last && (last[1] === null || from <= last[1])) last[1] = last[1] === null || to === null ? null : Math.max(last[1], to)
+    else joined.push([from, to])
+  }
+  return joined
+}
+
+function recoveryOf(versionId: number | null, facts: PlanFacts): Recovery | null {
+  const recovery = facts.recoveries.find(each => each.versionId === versionId && each.name !== null)
+  return recovery ? { penalty: missed, minutes: recovery.minutes } : null
+}

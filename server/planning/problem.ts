@@ -1,0 +1,163 @@
+import { handsOf } from '~~/server/planning/hands'
+import type { Hands } from '~~/server/planning/hands'
+import type { PlanFacts } from '~~/server/planning/facts'
+import { activityId, lagsOf } from '~~/server/planning/lags'
+import type { LagInput, StepWork } from '~~/server/planning/lags'
+import { minutesFrom } from '~~/server/planning/waits'
+import type { WaitsToCome } from '~~/server/planning/waits'
+import { planProblem } from '#shared/planning/problem'
+import type { PlanInput } from '#shared/planning/problem'
+import type { PlanProblem } from '#shared/planning/types'
+import type { PlaceKind } from '#shared/terms'
+import { studioZone } from '#shared/time'
+
+/** How far ahead a plan looks. */
+const horizonDays = 90
+/** Starts are given on the quarter of an hour, and nothing is asked for sooner than the next one. */
+const quarter = 15 * 60_000
+
+type Step = PlanFacts['steps'][number]
+type TurnRow = PlanFacts['turns'][number]
+
+/** A problem with what is needed to read its plan back: instants count from `zeroAt`. */
+export interface StudioProblem { problem: PlanProblem, zeroAt: number, works: StepWork[], hands: Hands[], untested: Set<number>, leftOut: number[] }
+
+/** The planner's problem of a studio at `now` (ms UTC): every open turn of every piece that anything but a decision can let begin. */
+export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number): StudioProblem {
+  const zeroAt = Math.ceil(now / quarter) * quarter
+  const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt, zeroAt + horizonDays * 24 * 60 * 60_000)
+  const works = worksOf(facts)
+  const found = byPiece(works).map(own => lagsOf(own, facts, toCome, zeroAt))
+  const lags = found.flatMap(each => each.lags)
+  const leftOut = follow(new Set(found.flatMap(each => [...each.unreachable])), works, lags, hands)
+  const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
+  const known = new Set(planned.flatMap(work => work.turns.map(turn => activityId(turn.id))))
+  const input: PlanInput = {
+    activities: planned.flatMap(work => work.turns.map(turn => activity(work.step, turn, hands))),
+    resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: each.open })), ...placesOf(facts)],
+    lags: lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from))),
+    rests: restsOf(planned, facts, lags, known),
+    apart: apartOf(planned),
+    families: familiesOf(planned),
+    jobs: jobsOf(planned, facts, zeroAt),
+    fixed: fixedOf(planned, facts, hands, zeroAt),
+    horizon: horizonDays * 24 * 60,
+    previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
+  }
+  return { problem: planProblem(input), zeroAt, works: planned, hands, untested: new Set(found.flatMap(each => [...each.untested])), leftOut: [...leftOut] }
+}
+
+function worksOf(facts: PlanFacts): StepWork[] {
+  const turns = new Map<number, TurnRow[]>()
+  for (const turn of facts.turns) turns.set(turn.stepId, [...turns.get(turn.stepId) ?? [], turn])
+  const partOf = new Map(facts.targets.map(target => [target.stepId, target.partId]))
+  const roomOf = new Map(facts.stays.map(stay => [stay.partId, stay.roomId]))
+  const roomOfPiece = new Map(facts.stays.map(stay => [stay.pieceId, stay.roomId]))
+  return facts.steps.flatMap((step) => {
+    const own = turns.get(step.id) ?? []
+    return own.length === 0 ? [] : [{ step, turns: own, roomId: roomOf.get(partOf.get(step.id) ?? 0) ?? roomOfPiece.get(step.pieceId) ?? null }]
+  })
+}
+
+function byPiece(works: readonly StepWork[]): StepWork[][] {
+  const pieces = new Map<number, StepWork[]>()
+  for (const work of works) pieces.set(work.step.pieceId, [...pieces.get(work.step.pieceId) ?? [], work])
+  return [...pieces.values()]
+}
+
+/** What waits for a turn that nobody can give a time to has no time either; nor has work that nobody here may do. */
+function follow(unreachable: Set<number>, works: readonly StepWork[], lags: readonly LagInput[], hands: readonly Hands[]): Set<number> {
+  const out = new Set(unreachable)
+  for (const { step, turns } of works) if (step.hands > hands.filter(each => each.may(step.kind)).length) for (const turn of turns) out.add(turn.id)
+  for (let grew = true; grew;) {
+    grew = false
+    for (const lag of lags) {
+      const [from, to] = [turnOf(lag.from), turnOf(lag.to)]
+      if (from === null || to === null || !out.has(from) || out.has(to)) continue
+      out.add(to)
+      grew = true
+    }
+  }
+  return out
+}
+
+const turnOf = (id: string | null | undefined) => (id ? Number(id.slice(1)) : null)
+
+function activity(step: Step, turn: TurnRow, hands: readonly Hands[]): PlanInput['activities'][number] {
+  const able = hands.filter(each => each.may(step.kind)).map(each => each.id)
+  return { id: activityId(turn.id), minutes: Math.max(1, turn.minutes), uses: {}, choices: step.hands > 0 ? [{ of: able, count: step.hands }] : [], mayRunOver: step.mayRunOver }
+}
+
+const placeId = (kind: PlaceKind) => `p ${kind}`
+
+function placesOf(facts: PlanFacts) {
+  const kinds = new Map<PlaceKind, number>()
+  for (const place of facts.places) kinds.set(place.kind, (kinds.get(place.kind) ?? 0) + place.capacity)
+  return [...kinds].map(([kind, capacity]) => ({ id: placeId(kind), capacity }))
+}
+
+/** What holds a piece while it rests: clamps until it is out, a rail or a booth until its next step really begins. */
+function restsOf(works: readonly StepWork[], facts: PlanFacts, lags: readonly LagInput[], known: ReadonlySet<string>): NonNullable<PlanInput['rests']> {
+  const kinds = new Set(facts.places.map(place => place.kind))
+  const units = new Map(facts.pieces.map(each => [each.id, each.sizeUnits]))
+  return works.flatMap(({ step, turns }) => {
+    if (step.placeKind === null || !kinds.has(step.placeKind) || (step.kind !== 'coat' && step.kind !== 'glue-up')) return []
+    const uses = { [placeId(step.placeKind)]: step.hold === null ? units.get(step.pieceId) ?? 1 : 1 }
+    const coats = turns.filter(turn => turn.kind === 'work')
+    const release = turns.find(turn => turn.kind === 'release')
+    const last = coats[coats.length - 1]
+    const after = release ? activityId(release.id) : lags.find(lag => last && lag.from === activityId(last.id) && known.has(lag.to))?.to
+    if (!last) return release ? [{ from: null, to: activityId(release.id), uses }] : []
+    return after ? [{ from: activityId(last.id), to: after, uses }] : []
+  })
+}
+
+/** Much dust settles for half an hour before a film may lie in the same room (planning value); a film minds it while it is being laid and an hour after. */
+const settling = 30
+const openFilm = 60
+
+function apartOf(works: readonly StepWork[]): NonNullable<PlanInput['apart']> {
+  const rooms = new Map<number, StepWork[]>()
+  for (const work of works) if (work.roomId !== null) rooms.set(work.roomId, [...rooms.get(work.roomId) ?? [], work])
+  return [...rooms].flatMap(([roomId, own]) => {
+    const members = (wanted: (step: Step) => boolean, after: number) => own.filter(work => wanted(work.step)).flatMap(work => work.turns.filter(turn => turn.kind === 'work').map(turn => ({ activity: activityId(turn.id), after })))
+    const one = members(step => step.dust === 'much', settling)
+    const other = members(step => step.kind === 'coat', openFilm)
+    return one.length > 0 && other.length > 0 ? [{ id: `dust ${roomId}`, one, other }] : []
+  })
+}
+
+/** Like work in one room is set up for and cleaned up after once. */
+export const familyOf = ({ step, roomId }: StepWork) => `${step.materialVersionId === null ? step.name : `${step.kind} ${step.materialVersionId}`} | ${roomId}`
+
+function familiesOf(works: readonly StepWork[]): NonNullable<PlanInput['families']> {
+  const families = new Map<string, { setup: number, cleanup: number, members: string[] }>()
+  for (const work of works) {
+    if (work.step.setupMin + work.step.cleanMin === 0) continue
+    const known = families.get(familyOf(work)) ?? { setup: 0, cleanup: 0, members: [] }
+    known.setup = Math.max(known.setup, work.step.setupMin)
+    known.cleanup = Math.max(known.cleanup, work.step.cleanMin)
+    known.members.push(...work.turns.filter(turn => turn.kind === 'work' && turn.status === 'waiting').map(turn => activityId(turn.id)))
+    families.set(familyOf(work), known)
+  }
+  return [...families].filter(([, family]) => family.members.length > 0).map(([id, family]) => ({ id, ...family, mode: 'row' as const }))
+}
+
+function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): NonNullable<PlanInput['jobs']> {
+  const pieces = new Map(facts.pieces.map(each => [each.id, each]))
+  return byPiece(works).map((own) => {
+    const row = pieces.get(own[0]?.step.pieceId ?? 0)
+    return { id: `piece ${row?.id}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
+  })
+}
+
+/** Work in hand stays with who is at it; a pin stays where somebody put it. */
+function fixedOf(works: readonly StepWork[], facts: PlanFacts, hands: readonly Hands[], zeroAt: number): NonNullable<PlanInput['fixed']> {
+  return works.flatMap(({ step, turns }) => turns.flatMap((turn) => {
+    const able = hands.filter(each => each.may(step.kind))
+    const chosen = (memberId: number | null) => [...able].sort((a, b) => Number(b.memberId === memberId) - Number(a.memberId === memberId)).slice(0, step.hands).map(each => each.id)
+    if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor), resources: chosen(turn.doingMemberId) }]
+    const pinned = facts.pins.find(pin => pin.turnId === turn.id && pin.startsAt >= zeroAt)
+    return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId) }] : []
+  }))
+}

@@ -1,0 +1,74 @@
+import { airOf, roomAirs } from '~~/server/work/air'
+import { dryingMaterials } from '~~/server/work/materials'
+import { preparedMaterials } from '~~/server/work/predict'
+import { materialsToCome } from '~~/server/planning/facts'
+import type { PlanFacts } from '~~/server/planning/facts'
+import type { Database } from '~~/server/utils/database'
+import { roomClock } from '#shared/drying/clock'
+import type { RoomClock } from '#shared/drying/clock'
+import { predictCoat } from '#shared/drying/predict'
+import type { CoatPrediction, DryingMaterial, MilestonePrediction } from '#shared/drying/types'
+import { milestoneNames } from '#shared/terms'
+import type { MilestoneName, Risk } from '#shared/terms'
+
+const minute = 60_000
+
+/** Without a promise the plan uses this much more than the likely wait, and says "only after a touch test" (planning value). */
+const unpromised = 1.4
+
+/** A wait in whole minutes, or null when no end of it is in sight; `promised` false when only a touch test can end it. */
+export interface Wait { minutes: number | null, promised: boolean, windows: [from: number, to: number | null][] }
+
+/** The instant a rung is reached at a risk, or what stands in for it without a promise. ms UTC. */
+export function reachedAt(rung: Pick<MilestonePrediction, 'likelyAt' | 'p90At' | 'p98At' | 'reachedAt'>, risk: Risk, since: number): { at: number | null, promised: boolean } {
+  const at = rung.reachedAt ?? { likely: rung.likelyAt, p90: rung.p90At, p98: rung.p98At }[risk]
+  if (at !== null) return { at, promised: true }
+  return { at: rung.likelyAt === null ? null : since + Math.round((rung.likelyAt - since) * unpromised), promised: false }
+}
+
+/** The rung asked for, or the next one up in a ladder that has not got it. */
+export function rungFor<Rung extends { name: string }>(rungs: readonly Rung[], name: MilestoneName): Rung | null {
+  const wanted = milestoneNames.indexOf(name)
+  return rungs.find(rung => rung.name === name) ?? rungs.find(rung => milestoneNames.findIndex(each => each === rung.name) >= wanted) ?? rungs[rungs.length - 1] ?? null
+}
+
+/**
+ * How long coats that are still to come will have to wait, as if each went on now in the room its piece stands in.
+ * One prediction for each material, room, coat and ground, kept for the length of one plan.
+ */
+export class WaitsToCome {
+  readonly #materials: Map<number, DryingMaterial>
+  readonly #clocks = new Map<number | null, RoomClock>()
+  readonly #kept = new Map<string, CoatPrediction>()
+  readonly #clockOf: (roomId: number | null) => RoomClock
+
+  constructor(db: Database, facts: PlanFacts, readonly now: number) {
+    this.#materials = dryingMaterials(db, facts.owner.id, materialsToCome(facts))
+    const airs = roomAirs(db, facts.owner, now)
+    this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
+  }
+
+  /** From the end of a coat of this step until the next may follow. */
+  wait(step: PlanFacts['steps'][number], roomId: number | null, milestone: MilestoneName, risk: Risk, windowed: boolean): Wait {
+    const prediction = this.#predict(step, roomId)
+    const rung = prediction && rungFor(prediction.milestones, milestone)
+    if (!prediction || !rung) return { minutes: 0, promised: true, windows: [] }
+    const { at, promised } = reachedAt(rung, risk, this.now)
+    const windows = windowed ? prediction.windows.flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(this.now, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(this.now, shutsAt, Math.floor)]])) : []
+    return { minutes: at === null ? null : minutesFrom(this.now, at, Math.ceil), promised, windows }
+  }
+
+  #predict(step: PlanFacts['steps'][number], roomId: number | null): CoatPrediction | null {
+    const material = step.materialVersionId === null ? undefined : this.#materials.get(step.materialVersionId)
+    if (!material) return null
+    const key = `${step.materialVersionId} ${roomId} ${step.coatSize} ${step.ground}`
+    const clock = this.#clocks.get(roomId) ?? this.#clockOf(roomId)
+    this.#clocks.set(roomId, clock)
+    const kept = this.#kept.get(key) ?? predictCoat(preparedMaterials.prepare(material), { appliedAt: this.now, size: step.coatSize, ground: step.ground }, [{ clock, fromAt: this.now, toAt: null }], { now: this.now })
+    this.#kept.set(key, kept)
+    return kept
+  }
+}
+
+/** Whole minutes from one instant to another. */
+export const minutesFrom = (zeroAt: number, at: number, rounding: (minutes: number) => number) => rounding((at - zeroAt) / minute)
