@@ -100,7 +100,7 @@ function placesOf(facts: PlanFacts) {
 function restsOf(works: readonly StepWork[], facts: PlanFacts, lags: readonly LagInput[], known: ReadonlySet<string>): NonNullable<PlanInput['rests']> {
   const kinds = new Set(facts.places.map(place => place.kind))
   const units = new Map(facts.pieces.map(each => [each.id, each.sizeUnits]))
-  return works.flatMap(({ step, turns }) => {
+  return works.flatMap(({ step, turns }): NonNullable<PlanInput['rests']>[number][] => {
     if (step.placeKind === null || !kinds.has(step.placeKind) || (step.kind !== 'coat' && step.kind !== 'glue-up')) return []
     const uses = { [placeId(step.placeKind)]: step.hold === null ? units.get(step.pieceId) ?? 1 : 1 }
     const coats = turns.filter(turn => turn.kind === 'work')

@@ -1,6 +1,5 @@
 import { airOf, roomAirs } from '~~/server/work/air'
-import { dryingMaterials } from '~~/server/work/materials'
-import { preparedMaterials } from '~~/server/work/predict'
+import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { materialsToCome } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { Database } from '~~/server/utils/database'

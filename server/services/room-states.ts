@@ -4,13 +4,11 @@ import { memberNames } from '~~/server/services/member-names'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { roomAirs } from '~~/server/work/air'
-import { airTables } from '#shared/air/tables'
+import { preparedMaterials } from '~~/server/work/materials'
 import { airAt, roomTrack } from '#shared/air/room'
 import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
 
 type Reader = Database | Transaction
-
-const tables = airTables()
 
 /** The rooms with their air now and whether anybody must stay out. */
 export function roomStates(db: Reader, studioId: number, now: number): RoomState[] {
@@ -22,7 +20,7 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
   return db.select().from(room).where(scoped(room, studioId)).orderBy(asc(room.sort), asc(room.id)).all().map((row): RoomState => {
     const known = airs.get(row.id)
     const closed = shut.find(each => each.roomId === row.id)
-    const air = known && airAt(roomTrack(known, tables), now)
+    const air = known && airAt(roomTrack(known, preparedMaterials.tools.air), now)
     return {
       id: row.id, name: row.name, heated: row.heated, outdoor: row.outdoor, sprayArea: row.sprayArea,
       air: air ? { tempC: air.tempC, rh: air.rh, readAt: known.readings.filter(each => each.at <= now).at(-1)?.at ?? null, assumed: air.assumed } : null,

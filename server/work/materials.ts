@@ -4,6 +4,10 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { prepareMaterial } from '#shared/drying/material'
 import type { PreparedMaterial } from '#shared/drying/material'
+<<<<<<< HEAD
+=======
+import { dryingTools } from '#shared/drying/tools'
+>>>>>>> e5ce219 (Plan a studio anew after every change, and put in recoveries)
 import type { DryingTools } from '#shared/drying/tools'
 import type { DryingMaterial } from '#shared/drying/types'
 
@@ -38,3 +42,6 @@ export class PreparedMaterials {
     return kept
   }
 }
+
+/** Tables that depend on no reading, built once for the process: the warm start of every prediction. */
+export const preparedMaterials = new PreparedMaterials(dryingTools())

@@ -1,0 +1,63 @@
+import type { PlanFacts } from '~~/server/planning/facts'
+import type { StudioProblem } from '~~/server/planning/problem'
+import { minutesFrom } from '~~/server/planning/waits'
+import { lastStart } from '#shared/planning/lastStart'
+import type { Interval, Plan } from '#shared/planning/types'
+
+/** The last moment to begin a session and still do all, and as many as can still be done; minutes from the problem's zero. */
+export interface LastStarts { lastStart: number | null, firstFew: number | null, lastStartFew: number | null }
+
+/**
+ * Counted back, for each turn whose window after a film that lies already will shut, over all turns of its session: from
+ * the early end of the windows by set-up and minutes per piece, inside somebody's hours.
+ * @param nowMinute now, counted from the problem's zero
+ */
+export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts, nowMinute: number): Map<string, LastStarts> {
+  const shuts = shutsOf(given, facts)
+  const works = new Map<string, StudioProblem['works'][number]>(given.works.flatMap(work => work.turns.map(turn => [`t${turn.id}`, work] as const)))
+  const open = hoursOfAnybody(given)
+  const groups = new Map<string, string[]>()
+  for (const entry of plan.entries) {
+    if (!shuts.has(entry.activity)) continue
+    const key = entry.session === null ? entry.activity : `s${entry.session}`
+    groups.set(key, [...groups.get(key) ?? [], entry.activity])
+  }
+  const found = new Map<string, LastStarts>()
+  for (const members of groups.values()) {
+    const step = works.get(members[0] ?? '')?.step
+    if (!step) continue
+    const { all, firstFew } = lastStart({ shuts: members.map(id => shuts.get(id) ?? 0), setup: step.setupMin, minutes: step.pieceMin, now: nowMinute, open })
+    for (const id of members) found.set(id, { lastStart: all, firstFew: firstFew?.count ?? null, lastStartFew: firstFew?.minute ?? null })
+  }
+  return found
+}
+
+/** When the window of a waiting turn shuts for good; only films that lie already have a shutting that is foretold. */
+function shutsOf(given: StudioProblem, facts: PlanFacts): Map<string, number> {
+  const found = new Map<string, number>()
+  for (const { step, turns } of given.works) {
+    const first = turns.find(turn => turn.kind === 'work' && turn.status === 'waiting')
+    if (!first) continue
+    const before = facts.links.filter(link => link.toStepId === step.id && link.windowed).map(link => link.fromStepId)
+    const froms = step.status === 'resting' ? [step.id] : before
+    for (const stepId of froms) {
+      const film = facts.films.filter(each => each.stepId === stepId).at(-1)
+      const ends = facts.windows.filter(each => each.coatId === film?.coatId)
+      const last = ends.reduce<number | null | undefined>((end, each) => (end === null || each.shutsAt === null ? null : Math.max(end ?? -Infinity, each.shutsAt)), undefined)
+      if (typeof last === 'number') found.set(`t${first.id}`, Math.min(found.get(`t${first.id}`) ?? Infinity, minutesFrom(given.zeroAt, last, Math.floor)))
+    }
+  }
+  return found
+}
+
+/** The union of everybody's hours: a session needs somebody, not everybody. */
+function hoursOfAnybody(given: StudioProblem): Interval[] {
+  const all = given.hands.flatMap(each => each.open).sort((a, b) => a[0] - b[0])
+  const joined: [number, number][] = []
+  for (const [from, to] of all) {
+    const last = joined[joined.length - 1]
+    if (last && from <= last[1]) last[1] = Math.max(last[1], to)
+    else joined.push([from, to])
+  }
+  return joined
+}

@@ -1,0 +1,63 @@
+import { eq, sql } from 'drizzle-orm'
+import { plan as planTable, planEntry, planSession } from '~~/db/schema'
+import { clashSentences } from '~~/server/planning/clashes'
+import type { PlanFacts } from '~~/server/planning/facts'
+import { familyOf } from '~~/server/planning/problem'
+import type { StudioProblem } from '~~/server/planning/problem'
+import type { LastStarts } from '~~/server/planning/last-starts'
+import type { Transaction } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import type { Plan } from '#shared/planning/types'
+
+const minute = 60_000
+const rowsAtOnce = 400
+
+/** Puts a plan in place of the last one. Only the one in force is kept; a silent start is carried on as due. */
+export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProblem, made: Plan, lastStarts: ReadonlyMap<string, LastStarts>, now: number) {
+  const studioId = facts.owner.id
+  tx.delete(planTable).where(scoped(planTable, studioId)).run()
+  const at = (minutes: number | null) => (minutes === null ? null : given.zeroAt + minutes * minute)
+  const planId = tx.insert(planTable).values({
+    studioId, madeAt: now, revision: sql<number>`(select revision from studio where id = ${studioId})`, seed: made.seed, status: made.status, objective: { ...made.objective },
+    clashes: clashSentences(made, given), current: true,
+  }).returning({ id: planTable.id }).get().id
+  const roomOf = new Map(given.works.map(work => [familyOf(work), work.roomId]))
+  const sessionIds = made.sessions.map(session => tx.insert(planSession).values({
+    studioId, planId, family: session.family, roomId: roomOf.get(session.family) ?? null, startsAt: given.zeroAt + session.start * minute, endsAt: given.zeroAt + session.end * minute,
+    setupMin: given.problem.families.find(family => family.id === session.family)?.setup ?? 0,
+  }).returning({ id: planSession.id }).get().id)
+  const due = silentStarts(facts, now)
+  const rows = made.entries.map((entry): typeof planEntry.$inferInsert => {
+    const turnId = Number(entry.activity.slice(1))
+    const startsAt = given.zeroAt + entry.start * minute
+    const last = lastStarts.get(entry.activity)
+    return {
+      studioId, planId, turnId, sessionId: entry.session === null ? null : sessionIds[entry.session] ?? null, memberId: entry.resources[0] ? Number(entry.resources[0].slice(1)) : null,
+      startsAt, endsAt: given.zeroAt + entry.end * minute, dueAt: due.get(turnId) ?? startsAt,
+      lastStartAt: at(last?.lastStart ?? null), firstFew: last?.firstFew ?? null, lastStartFewAt: at(last?.lastStartFew ?? null), afterTest: given.untested.has(turnId),
+    }
+  })
+  for (let from = 0; from < rows.length; from += rowsAtOnce) tx.insert(planEntry).values(rows.slice(from, from + rowsAtOnce)).run()
+  return planId
+}
+
+/** Planned starts that have passed with nobody saying whether it went on: they stay due until somebody does. */
+function silentStarts(facts: PlanFacts, now: number): Map<number, number> {
+  const turns = new Map(facts.turns.map(turn => [turn.id, turn]))
+  return new Map(facts.last.flatMap((entry) => {
+    const turn = turns.get(entry.turnId)
+    const silent = turn?.status === 'waiting' && entry.dueAt <= now && (turn.notOnAt === null || turn.notOnAt < entry.dueAt)
+    return silent ? [[entry.turnId, entry.dueAt] as const] : []
+  }))
+}
+
+/** Whether a plan is still for the studio that it was made from. */
+export function isCurrent(tx: Transaction, facts: PlanFacts): boolean {
+  const row = tx.get<{ revision: number }>(sql`select revision from studio where id = ${facts.owner.id}`)
+  return row?.revision === facts.owner.revision
+}
+
+/** Puts the plan of a studio away that has nothing left to plan. */
+export function clearPlan(tx: Transaction, studioId: number) {
+  tx.delete(planTable).where(eq(planTable.studioId, studioId)).run()
+}
