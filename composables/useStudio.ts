@@ -42,7 +42,7 @@ export async function useStudio(wallToken: string | null = null) {
   watch(live.revision, revision => revision !== null && revision !== store.state?.revision && void store.load(wallToken))
   onMounted(() => {
     untold.start()
-    void untold.tellAll().then(() => untold.acts.length > 0 || store.load(wallToken))
+    void untold.tellAll().then(() => untold.acts.length > 0 ? undefined : store.load(wallToken))
   })
   useEventListener('online', () => void untold.tellAll())
   useIntervalFn(() => untold.acts.length > 0 && void untold.tellAll(), 15_000)

@@ -4,10 +4,6 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { prepareMaterial } from '#shared/drying/material'
 import type { PreparedMaterial } from '#shared/drying/material'
-<<<<<<< HEAD
-=======
-import { dryingTools } from '#shared/drying/tools'
->>>>>>> e5ce219 (Plan a studio anew after every change, and put in recoveries)
 import type { DryingTools } from '#shared/drying/tools'
 import type { DryingMaterial } from '#shared/drying/types'
 
