@@ -12,6 +12,8 @@ export const controlWords = {
   off: 'off',
   caution: 'Caution.',
   note: 'Note.',
+  free: 'free',
+  moreFree: 'more free',
   when: 'When',
   timeNow: 'now',
   timeAgo: 'ago',
