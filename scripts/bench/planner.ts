@@ -66,12 +66,14 @@ const middle = (values: number[]) => values.sort((a, b) => a - b)[Math.floor(val
 
 function measure(pieces: number): string {
   const problem = studioProblem(pieces)
+  const cpu = process.cpuUsage()
   const cold = timed(() => solve(problem, { seed, schedules: 1 }))
+  const used = process.cpuUsage(cpu)
   const warm = middle(Array.from({ length: 5 }, () => timed(() => solve(problem, { seed, schedules: 1 })).ms))
   const all = timed(() => solve(problem, { seed }))
   const judged = timed(() => check(problem, cold.value))
   const { windowsMissed, lateness, setup } = cold.value.objective
-  return `planner ${pieces} x ${steps}: first plan ${cold.ms.toFixed(0)} ms cold, ${warm.toFixed(0)} ms warm (median of 5); ${all.value.schedules} plans ${all.ms.toFixed(0)} ms, `
+  return `planner ${pieces} x ${steps}: first plan ${cold.ms.toFixed(0)} ms cold (${((used.user + used.system) / 1000).toFixed(0)} ms of processor), ${warm.toFixed(0)} ms warm (median of 5); ${all.value.schedules} plans ${all.ms.toFixed(0)} ms, `
     + `lateness ${lateness} -> ${all.value.objective.lateness} weighted min, set-up ${setup} -> ${all.value.objective.setup} min, missed ${windowsMissed} -> ${all.value.objective.windowsMissed}; `
     + `without a start ${cold.value.unplaced.length}; judged in ${judged.ms.toFixed(0)} ms, ${judged.value.length} violations`
 }

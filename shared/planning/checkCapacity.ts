@@ -6,7 +6,10 @@ interface Hold { from: number, to: number, amount: number, activity: string, for
 function holdsOf(facts: Facts): Map<string, Hold[]> {
   const holds = new Map<string, Hold[]>()
   const add = (id: string, hold: Hold) => {
-    if (hold.to > hold.from) holds.set(id, [...holds.get(id) ?? [], hold])
+    if (hold.to <= hold.from) return
+    const known = holds.get(id)
+    if (known) known.push(hold)
+    else holds.set(id, [hold])
   }
   for (const span of facts.spans) {
     for (const [id, amount] of Object.entries(span.uses)) add(id, { from: span.start, to: span.end, amount, activity: span.activity, forced: span.fixed })
