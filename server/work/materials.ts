@@ -4,6 +4,7 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { prepareMaterial } from '#shared/drying/material'
 import type { PreparedMaterial } from '#shared/drying/material'
+import { dryingTools } from '#shared/drying/tools'
 import type { DryingTools } from '#shared/drying/tools'
 import type { DryingMaterial } from '#shared/drying/types'
 
