@@ -3,15 +3,13 @@ import { coat, coatTarget, material, materialVersion, part, place, prediction, s
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { airOf, roomAirs } from '~~/server/work/air'
-import { dryingMaterials } from '~~/server/work/materials'
-import { airTables } from '#shared/air/tables'
-import { airAt, roomTrack } from '#shared/air/room'
+import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
+import { airAt } from '#shared/air/room'
 import { driverRate, explainRate } from '#shared/drying/rates'
+import { trackRoom } from '#shared/drying/tools'
 import type { DryingMaterial, RoomAir } from '#shared/drying/types'
 import type { RateWire } from '#shared/schemas/rate'
 import { milestoneNames } from '#shared/terms'
-
-const tables = airTables()
 
 /** Why some films dry as fast as they do at `now` (ms UTC), in the air of the room they stand in. Films that have settled, or have no material, are left out. */
 export function ratesOf(db: Database, studioId: number, coatIds: readonly number[], now: number): RateWire[] {
@@ -32,7 +30,7 @@ export function ratesOf(db: Database, studioId: number, coatIds: readonly number
 }
 
 function rateAt(sheet: DryingMaterial, rung: DryingMaterial['milestones'][number], room: RoomAir, now: number): Omit<RateWire, 'coatId' | 'material'> {
-  const { tempC, rh, assumed } = airAt(roomTrack(room, tables), now)
+  const { tempC, rh, assumed } = airAt(trackRoom(preparedMaterials.tools, room, now), now)
   const { reference, minTempC } = sheet
   return {
     towards: milestoneNames.find(name => name === rung.name) ?? 'dry-to-handle',

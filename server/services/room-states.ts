@@ -5,7 +5,8 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { roomAirs } from '~~/server/work/air'
 import { preparedMaterials } from '~~/server/work/materials'
-import { airAt, roomTrack } from '#shared/air/room'
+import { airAt } from '#shared/air/room'
+import { trackRoom } from '#shared/drying/tools'
 import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
 
 type Reader = Database | Transaction
@@ -20,7 +21,7 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
   return db.select().from(room).where(scoped(room, studioId)).orderBy(asc(room.sort), asc(room.id)).all().map((row): RoomState => {
     const known = airs.get(row.id)
     const closed = shut.find(each => each.roomId === row.id)
-    const air = known && airAt(roomTrack(known, preparedMaterials.tools.air), now)
+    const air = known && airAt(trackRoom(preparedMaterials.tools, known, now), now)
     return {
       id: row.id, name: row.name, heated: row.heated, outdoor: row.outdoor, sprayArea: row.sprayArea,
       air: air ? { tempC: air.tempC, rh: air.rh, readAt: known.readings.filter(each => each.at <= now).at(-1)?.at ?? null, assumed: air.assumed } : null,

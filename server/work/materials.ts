@@ -1,5 +1,5 @@
 import { asc, inArray } from 'drizzle-orm'
-import { materialFigure, milestone, recoatWindow } from '~~/db/schema'
+import { materialFigure, materialVersion, milestone, recoatWindow } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { prepareMaterial } from '#shared/drying/material'
@@ -7,6 +7,7 @@ import type { PreparedMaterial } from '#shared/drying/material'
 import { dryingTools } from '#shared/drying/tools'
 import type { DryingTools } from '#shared/drying/tools'
 import type { DryingMaterial } from '#shared/drying/types'
+import { hazes } from '#shared/library/types'
 
 /** What the drying clock needs of some material editions, by edition. Minutes, degrees Celsius, shares 0..1. */
 export function dryingMaterials(db: Database | Transaction, studioId: number, versionIds: readonly number[]): Map<number, DryingMaterial> {
@@ -15,11 +16,13 @@ export function dryingMaterials(db: Database | Transaction, studioId: number, ve
   const rungs = db.select().from(milestone).where(scoped(milestone, studioId, inArray(milestone.versionId, ids))).orderBy(asc(milestone.versionId), asc(milestone.ordinal)).all()
   const windows = db.select().from(recoatWindow).where(scoped(recoatWindow, studioId, inArray(recoatWindow.versionId, ids))).orderBy(asc(recoatWindow.ordinal)).all()
   const figures = db.select().from(materialFigure).where(scoped(materialFigure, studioId, inArray(materialFigure.versionId, ids))).all()
+  const solvents = new Map(db.select({ id: materialVersion.id, solvent: materialVersion.solvent }).from(materialVersion).where(scoped(materialVersion, studioId, inArray(materialVersion.id, ids))).all().map(each => [each.id, each.solvent]))
   return new Map(ids.map((id) => {
     const figure = (name: string) => figures.find(each => each.versionId === id && each.name === name)?.typical ?? null
     return [id, {
       reference: { tempC: figure('reference temperature') ?? 20, rh: figure('reference humidity') ?? 0.5 },
-      minTempC: figure('minimum temperature'), maxRh: figure('humidity ceiling'), dryAirFloor: figure('dry-air floor'), thicknessExponent: figure('thickness exponent') ?? 1,
+      minTempC: figure('minimum temperature'), maxRh: figure('humidity ceiling'), dryAirFloor: figure('dry-air floor'), thicknessExponent: figure('thickness exponent') ?? undefined,
+      blushes: hazes(solvents.get(id) ?? ''),
       milestones: rungs.filter(each => each.versionId === id).map(({ name, driver, low, typical, high }) => ({ name, driver, low, typical, high })),
       windows: windows.filter(each => each.versionId === id).map(({ fromMin, toMin }) => [fromMin, toMin] as const),
     }]

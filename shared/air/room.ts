@@ -5,11 +5,10 @@ import { rhFromDewPoint } from '#shared/air/psychrometrics'
 import type { DayShape, Measured } from '#shared/air/shape'
 import { hourPattern, nightShape, shapeAt } from '#shared/air/shape'
 import type { ZoneClock } from '#shared/air/zone'
-import { localTimeOfDay, zoneClock } from '#shared/air/zone'
+import { localTimeOfDay } from '#shared/air/zone'
 
 const hourMs = 3_600_000
 const longGapMs = 6 * hourMs
-const dayMs = 24 * hourMs
 
 /** A room's air made ready for asking: readings in order with their dew points, and the shape of its day. */
 export interface RoomTrack {
@@ -93,17 +92,17 @@ function inOrder(readings: readonly Reading[]): Reading[] {
 /**
  * Makes a room ready: dew points, the day's shape (its own pattern once readings cover three distinct local days; before that an
  * unheated room's night drop), and the temperature of readings given by a word, which follows the thermometer readings around them.
- * Of two readings at one instant the later in the list counts. Pass `zone` to spare reading the zone's clock changes again.
+ * Of two readings at one instant the later in the list counts. `zone` is the clock of the room's own zone over the readings and all
+ * that will be asked; `trackRoom` brings it.
  */
-export function roomTrack(room: RoomAir, tables: AirTables, zone?: ZoneClock): RoomTrack {
+export function roomTrack(room: RoomAir, tables: AirTables, zone: ZoneClock): RoomTrack {
   const readings = inOrder(room.readings)
-  const clock = zone ?? zoneClock(room.zone, (readings[0]?.at ?? 0) - dayMs, (readings.at(-1)?.at ?? 0) + 500 * dayMs)
   const measured: Measured[] = []
   for (const { at, tempC } of readings) if (tempC !== null) measured.push({ at, tempC })
-  const shape = hourPattern(measured, clock) ?? nightShape(room.heated ? 0 : room.nightDropC)
+  const shape = hourPattern(measured, zone) ?? nightShape(room.heated ? 0 : room.nightDropC)
   const knownAt = measured.map(m => m.at)
   const knownC = measured.map(m => m.tempC)
-  const temps = Float64Array.from(readings, r => r.tempC ?? tempOf(knownAt, knownC, lastBefore(knownAt, r.at), r.at, shape, clock, room.usual.tempC))
+  const temps = Float64Array.from(readings, r => r.tempC ?? tempOf(knownAt, knownC, lastBefore(knownAt, r.at), r.at, shape, zone, room.usual.tempC))
   const dewPointOf = (tempC: number, rh: number) => Math.min(tempC, tabledDewPoint(tables, rh * tabledSaturation(tables, tempC)))
   return {
     times: Float64Array.from(readings, r => r.at),
@@ -111,7 +110,7 @@ export function roomTrack(room: RoomAir, tables: AirTables, zone?: ZoneClock): R
     dewPoints: Float64Array.from(readings, (r, i) => dewPointOf(temps[i]!, r.rh)),
     doubts: Float64Array.from(readings, r => r.doubt ?? 0),
     shape,
-    zone: clock,
+    zone,
     usual: { tempC: room.usual.tempC, dewPointC: dewPointOf(room.usual.tempC, room.usual.rh) },
   }
 }
@@ -143,7 +142,7 @@ export function trackMany(track: RoomTrack, instants: Float64Array): { temps: Fl
 
 /**
  * A room's air at an instant (ms UTC), read or projected. RH is that of the dew point at the temperature, at most 1.
- * `track` comes from `roomTrack`; keep it while no reading changes.
+ * `track` comes from `trackRoom`; keep it while no reading changes.
  */
 export function airAt(track: RoomTrack, atMs: number): AirAt {
   const tempC = trackTemp(track, atMs)

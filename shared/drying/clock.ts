@@ -3,12 +3,12 @@ import type { RoomAir } from '#shared/drying/types'
 import type { AirTables } from '#shared/air/tables'
 import { ratioOfVapour, tabledSaturation } from '#shared/air/tables'
 import type { RoomTrack } from '#shared/air/room'
-import { lastBefore, roomTrack, trackDewPoint, trackMany, trackTemp } from '#shared/air/room'
+import { lastBefore, trackDewPoint, trackMany, trackTemp } from '#shared/air/room'
 import { shapeAt } from '#shared/air/shape'
 import { localTimeOfDay, offsetAt } from '#shared/air/zone'
 import { coldShare, fuses, moistureShare } from '#shared/drying/rates'
 import type { DryingTools } from '#shared/drying/tools'
-import { tabledForce, zoneOf } from '#shared/drying/tools'
+import { tabledForce, trackRoom } from '#shared/drying/tools'
 import type { PreparedMaterial } from '#shared/drying/material'
 
 const minuteMs = 60_000
@@ -82,14 +82,8 @@ function knots(track: RoomTrack, since: number, turnAt: number): Float64Array {
  * worked out, and the far future is one day repeated. `readings` out of order are sorted.
  */
 export function roomClock(room: RoomAir, since: number, tools: DryingTools): RoomClock {
-  let first = since
-  let last = since
-  for (const { at } of room.readings) {
-    first = Math.min(first, at)
-    last = Math.max(last, at)
-  }
-  const zone = zoneOf(tools, room.zone, first, last + 500 * dayMs)
-  const track = roomTrack(room, tools.air, zone)
+  const track = trackRoom(tools, room, since)
+  const { zone } = track
   const lastReadingAt = track.times.length > 0 ? track.times[track.times.length - 1]! : null
   const turnAt = Math.max(since, lastReadingAt ?? since)
   const times = knots(track, since, turnAt)

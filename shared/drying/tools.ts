@@ -1,9 +1,12 @@
 import type { Driver } from '#shared/terms'
 import type { AirTables } from '#shared/air/tables'
 import { airTables, tabledEvaporation } from '#shared/air/tables'
+import type { RoomTrack } from '#shared/air/room'
+import { roomTrack } from '#shared/air/room'
 import type { ZoneClock } from '#shared/air/zone'
 import { zoneClock } from '#shared/air/zone'
 import { drivers } from '#shared/terms'
+import type { RoomAir } from '#shared/drying/types'
 import { humidityShare, pace } from '#shared/drying/rates'
 
 const dayMs = 86_400_000
@@ -39,10 +42,21 @@ export function tabledForce(tools: DryingTools, driver: Driver, tempC: number, r
 }
 
 /** The zone's clock changes over a stretch at least as long as asked, read once and kept. */
-export function zoneOf(tools: DryingTools, zone: string, from: number, to: number): ZoneClock {
+function zoneOf(tools: DryingTools, zone: string, from: number, to: number): ZoneClock {
   const known = tools.zones.get(zone)
   if (known && known.from <= from && known.to >= to) return known
   const read = zoneClock(zone, Math.min(from - 100 * dayMs, known?.from ?? Infinity), Math.max(to + 100 * dayMs, known?.to ?? -Infinity))
   tools.zones.set(zone, read)
   return read
+}
+
+/** A room's track, good for any instant from its first reading, or from `at`, until 500 days past the later of its last reading and `at` (ms UTC). */
+export function trackRoom(tools: DryingTools, room: RoomAir, at: number): RoomTrack {
+  let first = at
+  let last = at
+  for (const reading of room.readings) {
+    first = Math.min(first, reading.at)
+    last = Math.max(last, reading.at)
+  }
+  return roomTrack(room, tools.air, zoneOf(tools, room.zone, first, last + 500 * dayMs))
 }

@@ -132,6 +132,11 @@ export function libraryFigure(material: LibraryMaterial, name: FigureName): Libr
   return material.figures.find(figure => figure.name === name) ?? null
 }
 
+/** Whether a solvent leaves so fast that it chills the film and damp air hazes it. */
+export function hazes(solvent: string): boolean {
+  return solvent === 'alcohol' || solvent === 'lacquer thinner'
+}
+
 /** What the drying clock needs of a library material. Minutes, degrees Celsius, shares 0..1, kg/kg. */
 export function dryingMaterial(material: LibraryMaterial): DryingMaterial {
   return {
@@ -142,6 +147,6 @@ export function dryingMaterial(material: LibraryMaterial): DryingMaterial {
     milestones: material.milestones.map(({ name, driver, low, typical, high }) => ({ name, driver, low, typical, high })),
     windows: material.windows.map(({ from, to }) => [from, to] as const),
     thicknessExponent: libraryFigure(material, 'thickness exponent')?.typical,
-    blushes: material.solvent === 'alcohol' || material.solvent === 'lacquer thinner',
+    blushes: hazes(material.solvent),
   }
 }

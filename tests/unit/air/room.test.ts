@@ -1,18 +1,19 @@
 import { describe, expect, it } from 'vitest'
 import type { RoomAir } from '#shared/drying/types'
-import { airAt, roomTrack, trackMany, trackTemp } from '#shared/air/room'
+import { airAt, trackMany, trackTemp } from '#shared/air/room'
+import { trackRoom } from '#shared/drying/tools'
 import { hourPattern, nightShape, shapeAt } from '#shared/air/shape'
 import { localTimeOfDay, offsetAt, zoneClock } from '#shared/air/zone'
 import { saturationPressure } from '#shared/air/psychrometrics'
 import { at, dayMs, hourMs, read, roomWith, tools } from '../../helpers/drying'
 
-const air = (room: RoomAir, iso: string) => airAt(roomTrack(room, tools.air), at(iso))
+const air = (room: RoomAir, iso: string) => airAt(trackRoom(tools, room, at(iso)), at(iso))
 
 describe('between readings', () => {
   const room = roomWith({ readings: [read('2026-03-01T08:00:00Z', 16, 0.6), read('2026-03-01T12:00:00Z', 20, 0.4)] })
 
   it('temperature and dew point are straight lines', () => {
-    const track = roomTrack(room, tools.air)
+    const track = trackRoom(tools, room, at('2026-03-01T08:00:00Z'))
     const noon = airAt(track, at('2026-03-01T10:00:00Z'))
     // Half way: (16 + 20)/2.
     expect(noon.tempC).toBeCloseTo(18, 9)
@@ -106,20 +107,20 @@ describe('the room\'s own pattern', () => {
 
   it('gives a reading by a word its temperature', () => {
     const worded = roomWith({ readings: [...days, { ...read('2026-03-04T13:30:00Z', null, 0.85), doubt: 0.2 }] })
-    const track = roomTrack(worded, tools.air)
+    const track = trackRoom(tools, worded, at('2026-03-04T13:30:00Z'))
     expect(track.temps.at(-1)).toBeCloseTo(20, 9)
     expect(track.doubts.at(-1)).toBe(0.2)
   })
 
   it('a word without any thermometer reading takes the usual temperature', () => {
-    const track = roomTrack(roomWith({ usual: { tempC: 16, rh: 0.5 }, readings: [read('2026-03-04T13:30:00Z', null, 0.7)] }), tools.air)
+    const track = trackRoom(tools, roomWith({ usual: { tempC: 16, rh: 0.5 }, readings: [read('2026-03-04T13:30:00Z', null, 0.7)] }), at('2026-03-01T12:00:00Z'))
     expect(track.temps[0]).toBe(16)
   })
 })
 
 describe('shapes and zones', () => {
   it('walking the readings gives what asking one by one gives', () => {
-    const track = roomTrack(roomWith({ heated: false, readings: [read('2026-03-01T15:00:00Z', 18, 0.5), read('2026-03-02T02:00:00Z', 12, 0.8)] }), tools.air)
+    const track = trackRoom(tools, roomWith({ heated: false, readings: [read('2026-03-01T15:00:00Z', 18, 0.5), read('2026-03-02T02:00:00Z', 12, 0.8)] }), at('2026-03-01T12:00:00Z'))
     const instants = Float64Array.from({ length: 60 }, (_, i) => at('2026-03-01T12:00:00Z') + i * 0.7 * hourMs)
     const many = trackMany(track, instants)
     expect([...many.temps]).toEqual([...instants].map(t => trackTemp(track, t)))

@@ -2,7 +2,8 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { CoatCase, DryingMaterial, Reading, RoomAir } from '#shared/drying/types'
 import { drivers } from '#shared/terms'
-import { airAt, roomTrack } from '#shared/air/room'
+import { airAt } from '#shared/air/room'
+import { trackRoom } from '#shared/drying/tools'
 import { roomClock } from '#shared/drying/clock'
 import type { AirSpan } from '#shared/drying/ladder'
 import { climb, instantOf, minutesAt, rungSlowness } from '#shared/drying/ladder'
@@ -16,7 +17,7 @@ const wayOf = (room: RoomAir, material: DryingMaterial, coat: CoatCase) =>
 
 /** The model's clock by plain minute steps: when each rung's typical is reached on the common path. Stops after four days. */
 function byMinutes(room: RoomAir, material: DryingMaterial, coat: CoatCase): (number | null)[] {
-  const track = roomTrack(room, tools.air)
+  const track = trackRoom(tools, room, coat.appliedAt)
   const slowness = rungSlowness(prepareMaterial(material, tools), coat)
   const reached: (number | null)[] = material.milestones.map(() => null)
   let minutes = 0
