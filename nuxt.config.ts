@@ -1,5 +1,6 @@
 import { join } from 'node:path'
 import { importGuard } from './config/import-guard'
+import { plannerWorkerPlugin } from './config/planner-worker'
 import { security } from './config/security'
 
 export default defineNuxtConfig({
@@ -25,6 +26,9 @@ export default defineNuxtConfig({
     compressPublicAssets: true,
     imports: { autoImport: false },
     serverAssets: [{ baseName: 'migrations', dir: '../db/migrations' }],
+  },
+  $production: {
+    nitro: { rollupConfig: { output: {}, plugins: [plannerWorkerPlugin(import.meta.dirname)] } },
   },
   vite: {
     plugins: [importGuard(import.meta.dirname)],

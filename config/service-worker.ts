@@ -9,7 +9,7 @@ import { build } from 'vite'
 export default defineNuxtModule({
   meta: { name: 'stillwet:service-worker' },
   setup(_options, nuxt) {
-    if (nuxt.options._prepare || nuxt.options.test) return
+    if (nuxt.options._prepare) return
     const out = join(nuxt.options.buildDir, 'service-worker')
     nuxt.hook('nitro:config', (nitro) => {
       nitro.publicAssets = [...nitro.publicAssets ?? [], { dir: out, baseURL: '/', maxAge: 0 }]
