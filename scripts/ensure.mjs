@@ -2,7 +2,7 @@
 // Plain Node without packages: it runs before there are any. Installs what package-lock.json asks for, then
 // builds the server when a source is newer than the last build, or finds a browser for the tests.
 import { execFileSync } from 'node:child_process'
-import { existsSync, readdirSync, statSync } from 'node:fs'
+import { existsSync, readFileSync, readdirSync, statSync } from 'node:fs'
 import { join } from 'node:path'
 
 const run = (command, args, options = {}) => execFileSync(command, args, { stdio: 'inherit', ...options })
@@ -18,10 +18,16 @@ function newest(path) {
   return Math.max(stat.mtimeMs, ...readdirSync(path).map(name => newest(join(path, name))))
 }
 
-export function ensurePackages() {
+// Compared by content: a fresh checkout gives the lock file a new time and would install everything again.
+function isInstalled() {
   const installed = 'node_modules/.package-lock.json'
-  if (existsSync(installed) && statSync('package-lock.json').mtimeMs <= statSync(installed).mtimeMs + 1000) return
-  run('npm', ['ci', '--no-audit', '--no-fund'])
+  if (!existsSync(installed)) return false
+  const [wanted, found] = ['package-lock.json', installed].map(file => JSON.parse(readFileSync(file, 'utf8')).packages)
+  return Object.entries(wanted).every(([path, { version, optional }]) => path === '' || optional || found[path]?.version === version)
+}
+
+export function ensurePackages() {
+  if (!isInstalled()) run('npm', ['ci', '--no-audit', '--no-fund'])
 }
 
 export function ensureBuild() {

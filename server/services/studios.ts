@@ -1,5 +1,6 @@
 import { count, eq } from 'drizzle-orm'
-import { member, studio } from '~~/db/schema'
+import { member, openHours, studio } from '~~/db/schema'
+import { seedLibrary } from '~~/db/seed/library'
 import { addPerson } from '~~/server/services/people'
 import { openSession } from '~~/server/services/sessions'
 import type { SignedIn, StudioRow } from '~~/server/services/sessions'
@@ -16,8 +17,11 @@ export function isUnclaimed(db: Database): boolean {
   return (db.select({ n: count() }).from(studio).where(eq(studio.demo, false)).get()?.n ?? 0) === 0
 }
 
+// Without any hours nothing could be planned; Settings changes them.
+const usualWeek = [1, 2, 3, 4, 5]
+
 /**
- * Makes a studio and its owner. Anybody may make the first one; afterwards only somebody signed in, so that an
+ * Makes a studio with the starter library and its owner. Anybody may make the first one; afterwards only somebody signed in, so that an
  * installation reachable from outside does not fill with strangers.
  * @returns the studio's number and the cookie's secret
  */
@@ -31,6 +35,8 @@ export async function createStudio(db: Database, signedIn: SignedIn | null, inpu
     if (isRefusal(personId)) return personId
     const { id: studioId } = tx.insert(studio).values({ name: input.name, zone: input.zone, madeAt: now }).returning({ id: studio.id }).get()
     tx.insert(member).values({ studioId, personId, role: 'owner' }).run()
+    tx.insert(openHours).values(usualWeek.map(weekday => ({ studioId, weekday, fromMin: 9 * 60, toMin: 17 * 60 }))).run()
+    seedLibrary(tx, studioId)
     return { ok: true as const, studioId, token: openSession(tx, personId, studioId, now) }
   }, { behavior: 'immediate' })
 }

@@ -38,10 +38,10 @@ async function ask(who: Visitor, file: string, route: RouteCase): Promise<Answer
 }
 
 beforeAll(async () => {
-  server = await startServer()
+  server = await startServer({ STILLWET_ALLOW_LOOPBACK_PUSH: '1' })
   const owner = await firstStudio(server.origin, `${marker} studio`)
   people = await cast(server.origin, owner)
-  rows = await fillStudio(owner)
+  rows = await fillStudio(owner, server.databaseFile)
   stranger = await otherOwner(server.origin, owner)
 })
 afterAll(() => server.stop())
@@ -68,7 +68,10 @@ describe('a role below the one needed', () => {
 
 describe('another studio\'s owner', () => {
   it.each(entries.filter(([, { apart }]) => apart === 'row' || apart === 'named'))('finds nothing at %s', async (file, route) => {
-    expect((await ask(stranger, file, route)).status).toBe(404)
+    // A row of the path is absent; one that a form names may also be called a wrong field of it.
+    const answers = route.apart === 'row' ? [404] : [400, 404, 422]
+    const answer = await ask(stranger, file, route)
+    expect(answers, JSON.stringify(answer.body)).toContain(answer.status)
   })
   it.each(entries.filter(([, { apart }]) => apart === 'view'))('sees nothing of the first studio at %s', async (file, route) => {
     const answer = await ask(stranger, file, route)
@@ -86,10 +89,10 @@ describe('another studio\'s owner', () => {
 describe('the lowest role that may', () => {
   // Deletions last and the place before its room, so that each still finds its row.
   const order = (file: string) => file.startsWith('members/') ? 3 : file.includes('.delete.') ? (file.startsWith('rooms/') ? 2 : 1) : 0
-  const ordered = entries.filter(([file, route]) => asksRole(route) && file !== 'closures/[id].delete.ts').sort(([a], [b]) => order(a) - order(b))
+  const ordered = entries.filter(([file, route]) => asksRole(route)).sort(([a], [b]) => order(a) - order(b))
   it.each(ordered)('is let in by %s', async (file, route) => {
     const answer = await ask(people[route.least as keyof typeof rank], file, route)
     // 409: let in, and told that something in use cannot vanish.
-    expect([200, 409], JSON.stringify(answer.body)).toContain(answer.status)
+    expect(route.asLeast ? [route.asLeast] : [200, 409], JSON.stringify(answer.body)).toContain(answer.status)
   })
 })

@@ -1,4 +1,4 @@
-import { roomOf } from './rows'
+import { pushSubscription, roomOf } from './rows'
 import type { Rows } from './rows'
 import type { Role } from '#shared/terms'
 
@@ -13,7 +13,13 @@ export interface RouteCase {
    * names one, likewise; `view` the answer must hold nothing of the first studio; `none` with the reason beside it.
    */
   apart: 'row' | 'named' | 'view' | 'none'
+  /** What the lowest role is answered when the row is not theirs to change: the door is open, the row is not. */
+  asLeast?: number
 }
+
+const recently = () => new Date(Date.now() - 60_000).toISOString()
+let keys = 0
+const clientKey = () => `access-key-${keys += 1}`
 
 const place = (rows: Rows) => ({ roomId: rows.room, name: 'Rail', kind: 'rail', capacity: 4, sort: 1 })
 
@@ -46,7 +52,7 @@ export const routes: Record<string, RouteCase> = {
   'hours/index.put.ts': { least: 'owner', apart: 'named', body: rows => ({ memberId: rows.member, hours: [{ weekday: 1, fromMin: 540, toMin: 1020 }] }) },
   'closures/index.get.ts': { least: 'helper', apart: 'view' },
   'closures/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ memberId: rows.member, name: '', fromDate: '2030-06-01', toDate: '2030-06-01' }) },
-  'closures/[id].delete.ts': { least: 'helper', apart: 'row', at: 'closure' },
+  'closures/[id].delete.ts': { least: 'helper', apart: 'row', at: 'closure', asLeast: 404 },
   'rooms/index.get.ts': { least: 'helper', apart: 'view' },
   'rooms/index.post.ts': { least: 'maker', apart: 'view', body: () => roomOf('Loft') },
   'rooms/[id].patch.ts': { least: 'maker', apart: 'row', at: 'room', body: () => ({ sort: 3 }) },
@@ -60,4 +66,23 @@ export const routes: Record<string, RouteCase> = {
   'places/[id].delete.ts': { least: 'maker', apart: 'row', at: 'place' },
   'calls/index.get.ts': { least: 'helper', apart: 'view' },
   'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
+
+  'state.get.ts': { least: 'wall', apart: 'view' },
+  'batches/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ clientKey: clientKey(), name: 'Boxes', scheduleId: null, pieces: ['Box 1'], placeId: rows.place, order: null, startsAt: recently() }) },
+  'acts/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ clientKey: clientKey(), kind: 'seen', doneAt: recently(), pieces: [{ id: rows.piece, version: 1 }], body: {} }) },
+  'acts/[id]/correct.post.ts': { least: 'helper', apart: 'row', at: 'act', asLeast: 403, body: () => ({ clientKey: clientKey(), takeBack: true }) },
+  'rooms/[id]/readings.get.ts': { least: 'helper', apart: 'row', at: 'room' },
+  'rooms/[id]/readings.post.ts': { least: 'helper', apart: 'row', at: 'room', body: () => ({ clientKey: clientKey(), at: recently(), tempC: 19, rh: 0.5, words: null }) },
+  'readings/[id].delete.ts': { least: 'helper', apart: 'row', at: 'reading', asLeast: 403 },
+  'rags/index.get.ts': { least: 'helper', apart: 'view' },
+  'rags/[id]/answer.post.ts': { least: 'helper', apart: 'row', at: 'ragDuty', body: () => ({ answer: 'in water can' }) },
+  'reminders/index.get.ts': { least: 'helper', apart: 'view' },
+  'reminders/[id]/answer.post.ts': { least: 'helper', apart: 'row', at: 'reminder' },
+  'deliveries.get.ts': { least: 'helper', apart: 'view' },
+  'outbox.get.ts': { least: 'owner', apart: 'view' },
+  'push/key.get.ts': { least: 'helper', apart: 'view' },
+  'push/subscriptions/index.get.ts': { least: 'helper', apart: 'view' },
+  'push/subscriptions/index.post.ts': { least: 'helper', apart: 'view', body: () => pushSubscription('elsewhere') },
+  // Everybody ends their own subscription and nobody another's.
+  'push/subscriptions/[id].delete.ts': { least: 'helper', apart: 'row', at: 'subscription', asLeast: 404 },
 }

@@ -1,3 +1,5 @@
+import { createECDH, randomBytes } from 'node:crypto'
+import Sqlite from 'better-sqlite3'
 import { joinAs, visitor } from '../../helpers/sign-in'
 import type { Visitor } from '../../helpers/sign-in'
 
@@ -5,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, invitationToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, reading: number, ragDuty: number, reminder: number, subscription: number, invitationToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -15,8 +17,27 @@ const made = async (who: Visitor, path: string, body: unknown) => {
   return answer.body
 }
 
+const now = () => new Date(Date.now() - 120_000).toISOString()
+
+/** A browser's wish to be called: a real point of the curve and a secret of sixteen bytes. */
+export function pushSubscription(path: string) {
+  const curve = createECDH('prime256v1')
+  return { endpoint: `http://127.0.0.1:9/${path}`, keys: { p256dh: curve.generateKeys('base64url'), auth: randomBytes(16).toString('base64url') }, device: 'test' }
+}
+
+/** What comes about by the clock alone, so that no request can make it: a rag duty and a call. */
+function writeCalls(file: string, room: number, act: number) {
+  const db = new Sqlite(file)
+  const insert = (sql: string, ...values: unknown[]) => Number(db.prepare(sql).run(...values).lastInsertRowid)
+  const ragDuty = insert('insert into rag_duty (studio_id, room_id, last_oil_at, last_oil_act_id) values (1, ?, ?, ?)', room, Date.now(), act)
+  const cause = insert(`insert into cause (studio_id, kind, subject_type, subject_id, group_key, made_at) values (1, 'ready', 'turn', 1, 'g', ?)`, Date.now())
+  const reminder = insert(`insert into reminder (studio_id, cause_id, stage, due_at, status, title, body, path) values (1, ?, 'first', ?, 'sent', ?, '', '/hands')`, cause, Date.now(), `${marker} call`)
+  db.close()
+  return { ragDuty, reminder }
+}
+
 /** Fills the first studio with a row of everything that has a number in a path. */
-export async function fillStudio(owner: Visitor): Promise<Rows> {
+export async function fillStudio(owner: Visitor, databaseFile: string): Promise<Rows> {
   const room = await made(owner, '/api/rooms', roomOf(`${marker} room`))
   const place = await made(owner, '/api/places', { roomId: room.id, name: `${marker} shelf`, kind: 'shelf', capacity: 6, sort: 0 })
   const closure = await made(owner, '/api/closures', { memberId: null, name: `${marker} holiday`, fromDate: '2030-05-01', toDate: '2030-05-03' })
@@ -25,8 +46,14 @@ export async function fillStudio(owner: Visitor): Promise<Rows> {
   const members = await owner.get<{ id: number, role: string }[]>('/api/members')
   const helper = members.body.find(({ role }) => role === 'helper')
   if (!helper) throw new Error('The first studio has no helper.')
+  const batch = await owner.post<{ pieceIds: number[] }>('/api/batches', { clientKey: 'access-first-batch', name: `${marker} ledgers`, scheduleId: null, pieces: [`${marker} 1`], placeId: place.id, order: null, startsAt: now() })
+  const [piece = 0] = batch.body.pieceIds
+  const seen = await owner.post<{ actId: number }>('/api/acts', { clientKey: 'access-first-act', kind: 'seen', doneAt: now(), pieces: [{ id: piece, version: 1 }], body: {} })
+  const reading = await made(owner, `/api/rooms/${room.id}/readings`, { clientKey: 'access-reading', at: now(), tempC: 19, rh: 0.5, words: null })
+  const subscription = await made(owner, '/api/push/subscriptions', pushSubscription(marker))
+  const calls = writeCalls(databaseFile, room.id, seen.body.actId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, invitationToken: last(invitation.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, reading: reading.id, subscription: subscription.id, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */
