@@ -1,5 +1,4 @@
 import { FetchError } from 'ofetch'
-import type { SubscriptionWire } from '#shared/schemas/telling'
 import { pushStates } from '#shared/words/call-settings'
 import { ServerRefusal, lookUp, subscribe, unsubscribe } from './push/steps'
 import type { BrowserParts, PushOutcome, PushServer } from './push/steps'
@@ -14,8 +13,8 @@ async function ask<T>(call: Promise<T>): Promise<T> {
 }
 
 const server: PushServer = {
-  key: async () => (await ask($fetch<{ publicKey: string }>('/api/push/key'))).publicKey,
-  list: () => ask($fetch<SubscriptionWire[]>('/api/push/subscriptions')),
+  key: async () => (await ask($fetch('/api/push/key'))).publicKey,
+  list: () => ask($fetch('/api/push/subscriptions')),
   save: subscription => ask($fetch('/api/push/subscriptions', { method: 'POST', body: { ...subscription, device: deviceName() } })),
   end: id => ask($fetch(`/api/push/subscriptions/${id}`, { method: 'DELETE' })),
 }
