@@ -128,7 +128,7 @@ function apartOf(works: readonly StepWork[]): NonNullable<PlanInput['apart']> {
 }
 
 /** Like work in one room is set up for and cleaned up after once. */
-export const familyOf = ({ step, roomId }: StepWork) => `${step.materialVersionId === null ? step.name : `${step.kind} ${step.materialVersionId}`} | ${roomId}`
+export const familyOf = ({ step, roomId }: StepWork) => [step.kind, step.materialVersionId ?? step.name, `${step.hands} hands`, step.mayRunOver ? 'may run over' : '', roomId ?? ''].join(' | ')
 
 function familiesOf(works: readonly StepWork[]): NonNullable<PlanInput['families']> {
   const families = new Map<string, { setup: number, cleanup: number, members: string[] }>()
