@@ -25,6 +25,13 @@ export function pushSubscription(path: string) {
   return { endpoint: `http://127.0.0.1:9/${path}`, keys: { p256dh: curve.generateKeys('base64url'), auth: randomBytes(16).toString('base64url') }, device: 'test' }
 }
 
+function versionOf(file: string, piece: number) {
+  const db = new Sqlite(file, { readonly: true })
+  const version = db.prepare<[number], number>('select version from piece where id = ?').pluck().get(piece)
+  db.close()
+  return version ?? 0
+}
+
 /** What comes about by the clock alone, so that no request can make it: a rag duty and a call. */
 function writeCalls(file: string, room: number, act: number) {
   const db = new Sqlite(file)
@@ -48,7 +55,8 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   if (!helper) throw new Error('The first studio has no helper.')
   const batch = await owner.post<{ pieceIds: number[] }>('/api/batches', { clientKey: 'access-first-batch', name: `${marker} ledgers`, scheduleId: null, pieces: [`${marker} 1`], placeId: place.id, order: null, startsAt: now() })
   const [piece = 0] = batch.body.pieceIds
-  const seen = await owner.post<{ actId: number }>('/api/acts', { clientKey: 'access-first-act', kind: 'seen', doneAt: now(), pieces: [{ id: piece, version: 1 }], body: {} })
+  const seen = await owner.post<{ actId: number }>('/api/acts', { clientKey: 'access-first-act', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece, version: versionOf(databaseFile, piece) }], body: {} })
+  if (seen.status !== 200) throw new Error(`The act was answered with ${seen.status}: ${JSON.stringify(seen.body)}`)
   const reading = await made(owner, `/api/rooms/${room.id}/readings`, { clientKey: 'access-reading', at: now(), tempC: 19, rh: 0.5, words: null })
   const subscription = await made(owner, '/api/push/subscriptions', pushSubscription(marker))
   const calls = writeCalls(databaseFile, room.id, seen.body.actId)
