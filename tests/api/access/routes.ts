@@ -79,7 +79,7 @@ export const routes: Record<string, RouteCase> = {
   'reminders/index.get.ts': { least: 'helper', apart: 'view' },
   'reminders/[id]/answer.post.ts': { least: 'helper', apart: 'row', at: 'reminder' },
   'deliveries.get.ts': { least: 'helper', apart: 'view' },
-  'outbox.get.ts': { least: 'owner', apart: 'view' },
+  'outbox.get.ts': { least: 'maker', apart: 'view' },
   'push/key.get.ts': { least: 'helper', apart: 'view' },
   'push/subscriptions/index.get.ts': { least: 'helper', apart: 'view' },
   'push/subscriptions/index.post.ts': { least: 'helper', apart: 'view', body: () => pushSubscription('elsewhere') },
