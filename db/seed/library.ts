@@ -17,9 +17,9 @@ function freeName(name: string, taken: ReadonlySet<string>): string {
 
 function addMaterial(tx: Rows, studioId: number, from: LibraryMaterial, name: string): void {
   const { id: materialId } = tx.insert(material).values({ studioId, libraryKey: from.key, name }).returning({ id: material.id }).get()
-  const { kind, film, solvent, mustLieLevel, glovesUntil } = from
+  const { kind, film, solvent, mustLieLevel, dryingOil, isocyanate, glovesUntil } = from
   const { id: versionId } = tx.insert(materialVersion)
-    .values({ studioId, materialId, no: 1, kind, film, solvent, mustLieLevel, glovesUntil, cautions: [...from.cautions] })
+    .values({ studioId, materialId, no: 1, kind, film, solvent, mustLieLevel, dryingOil, isocyanate, glovesUntil, cautions: [...from.cautions] })
     .returning({ id: materialVersion.id }).get()
   const row = { studioId, versionId }
   tx.insert(milestone).values(from.milestones.map((rung, ordinal) => ({ ...row, ordinal, ...rung }))).run()

@@ -45,6 +45,13 @@ describe('copying the library into a studio', () => {
     expect(windows).toEqual([{ from: 0, to: 60 }, { from: 2880, to: null }])
   })
 
+  it('keeps what rags, vapour and gloves hang on', () => {
+    seedLibrary(db, studioId)
+    const flags = ({ mustLieLevel, dryingOil, isocyanate, glovesUntil }: Pick<typeof materialVersion.$inferSelect, 'mustLieLevel' | 'dryingOil' | 'isocyanate' | 'glovesUntil'>) => [mustLieLevel, dryingOil, isocyanate, glovesUntil]
+    const copied = db.select({ key: material.libraryKey, version: materialVersion }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId)).all()
+    expect(Object.fromEntries(copied.map(row => [row.key, flags(row.version)]))).toEqual(Object.fromEntries(libraryMaterials.map(each => [each.key, flags(each)])))
+  })
+
   it('keeps the graph: links between the right steps, faces on the right parts', () => {
     seedLibrary(db, studioId)
     const version = db.select({ id: scheduleVersion.id, summary: scheduleVersion.summary }).from(scheduleVersion)
