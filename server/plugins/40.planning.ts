@@ -29,6 +29,8 @@ function planSoon(studioId: number) {
 async function planNow(studioId: number) {
   try {
     const done = await replan(useDatabase(), studioId, Date.now())
+    // Something else was committed while it was being planned: plan what stands now.
+    if (!done.ok && done.reason === 'stale') planSoon(studioId)
     if (!done.ok && done.reason !== 'stale' && done.reason !== 'no studio') console.error(`The plan of studio ${studioId} was not made. ${done.message}`)
   }
   catch (error) {
