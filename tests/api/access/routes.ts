@@ -67,6 +67,9 @@ export const routes: Record<string, RouteCase> = {
   'calls/index.get.ts': { least: 'helper', apart: 'view' },
   'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
 
+  'pieces/[id].get.ts': { least: 'helper', apart: 'row', at: 'piece' },
+  'schedules/index.get.ts': { least: 'helper', apart: 'view' },
+  'schedules/[id].get.ts': { least: 'helper', apart: 'row', at: 'schedule' },
   'state.get.ts': { least: 'wall', apart: 'view' },
   'batches/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ clientKey: clientKey(), name: 'Boxes', scheduleId: null, pieces: ['Box 1'], placeId: rows.place, order: null, startsAt: recently() }) },
   'acts/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ clientKey: clientKey(), kind: 'seen', doneAt: recently(), pieces: [{ id: rows.piece, version: 1 }], body: {} }) },

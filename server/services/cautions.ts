@@ -1,0 +1,10 @@
+import type { CautionWire } from '#shared/schemas/schedule'
+
+/** The cautions of some materials, each once with the materials it speaks of, in the order first met. */
+export function cautionsOf(materials: readonly { name: string, cautions: readonly string[] }[]): CautionWire[] {
+  const named = new Map<string, Set<string>>()
+  for (const { name, cautions } of materials) {
+    for (const key of cautions) named.set(key, (named.get(key) ?? new Set()).add(name))
+  }
+  return [...named].map(([key, names]) => ({ key, materials: [...names] }))
+}

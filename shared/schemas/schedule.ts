@@ -1,0 +1,61 @@
+import type { DustClass, Hold, MilestoneName, Risk, StepKind } from '#shared/terms'
+
+/**
+ * A wait counted from the end of the work, in whole minutes of the studio's usual air: the middle and the cautious end.
+ * Null likely: no end in sight. `promised` false: only a touch test can end it, and the cautious end stands in for one.
+ */
+export interface WaitWire { likelyMin: number | null, giveTillMin: number | null, promised: boolean }
+
+export interface ScheduleStepWire {
+  key: string
+  name: string
+  kind: StepKind
+  material: { id: number, name: string } | null
+  hold: Hold | null
+  dust: DustClass
+  /** Names of the parts it works on. */
+  parts: string[]
+  perDay: number
+  days: number
+  untilEnough: boolean
+  setupMin: number
+  pieceMin: number
+  cleanMin: number
+  releaseMin: number
+  hands: number
+  checks: { name: string, afterMin: number, minutes: number }[]
+  /** Between two coats of a round. */
+  again: WaitWire | null
+  /** Until it comes out of what holds it. */
+  held: WaitWire | null
+  /** Until its film is dry to handle. */
+  dry: WaitWire | null
+}
+
+/** `windows` in minutes from the end of the step before; a null end never shuts. Empty where the link asks for none. */
+export interface ScheduleLinkWire { from: string, to: string, milestone: MilestoneName | null, risk: Risk, windowed: boolean, wait: WaitWire | null, windows: { opensMin: number, shutsMin: number | null }[] }
+
+export interface SchedulePartWire { key: string, name: string, grip: string | null, faces: { key: string, name: string }[] }
+
+/** What has a caution, and the materials it speaks of. */
+export interface CautionWire { key: string, materials: string[] }
+
+/** A finishing schedule to choose from. Elapsed minutes run around the clock, one piece, in the studio's usual air. */
+export interface ScheduleWire {
+  id: number
+  libraryKey: string | null
+  name: string
+  summary: string
+  no: number
+  parts: SchedulePartWire[]
+  stepCount: number
+  elapsed: WaitWire
+  /** Hands-on minutes of a batch of n: `setupMin + n * pieceMin`. */
+  setupMin: number
+  pieceMin: number
+  solventBorne: boolean
+  cautions: CautionWire[]
+}
+
+/** GET /api/schedules/7: the same with its steps and what each waits for. */
+export interface ScheduleDetailWire extends ScheduleWire { steps: ScheduleStepWire[], links: ScheduleLinkWire[] }
