@@ -5,7 +5,7 @@ import { began, checkDone, leftOut, notOnYet, resumed, setAside, workDone } from
 import { air, gone, moved, notThere, seen, touchTest } from '#shared/work/whereabouts'
 import { isFilm, latestAt, startDraft } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
-import type { Folded, Seed, WorkAct } from '#shared/work/types'
+import type { Folded, Seed, Step, WorkAct } from '#shared/work/types'
 
 type Telling = (draft: Draft, act: WorkAct) => void
 const nothing: Telling = () => {}
@@ -70,9 +70,15 @@ function closeRests(draft: Draft) {
   }
 }
 
+/** Only drying is left of it. A round with coats to come still stands before what follows. */
+function isBehind(step: Step): boolean {
+  if (step.status === 'resting') return !step.turns.some(turn => turn.kind === 'work' && turn.status === 'waiting')
+  return step.status === 'done' || step.status === 'left out'
+}
+
 /** Marks the steps whose turn it is: what comes before them is done, left out or only drying. */
 function findFront(draft: Draft) {
-  const behind = new Set(draft.steps.filter(step => ['resting', 'done', 'left out'].includes(step.status)).map(step => step.key))
+  const behind = new Set(draft.steps.filter(isBehind).map(step => step.key))
   for (const step of draft.steps) {
     const left = step.turns.some(turn => turn.status === 'waiting' || turn.status === 'doing')
     const reached = step.status !== 'waiting' || draft.links.every(link => link.to !== step.key || behind.has(link.from))

@@ -9,7 +9,7 @@ import { Player } from '~~/db/seed/demo/play'
 import type { Stage } from '~~/db/seed/demo/play'
 import { toldInOrder } from '~~/db/seed/demo/stories'
 import { seedLibrary } from '~~/db/seed/library'
-import type { Database, Transaction } from '~~/server/utils/database'
+import type { Database } from '~~/server/utils/database'
 import { makePasswordHash } from '~~/server/utils/password'
 
 export { demoSignIns }
@@ -36,20 +36,35 @@ export async function seedDemo(db: Database, now: number, zone: string = here())
   if (known !== null) return { studioId: known, signIns: demoSignIns }
   const calendar = calendarOf(now, zone)
   const hashes = await Promise.all(demoPasswords.map(makePasswordHash))
-  // One transaction around all: the services' own become parts of it, and half a demo is never left behind.
-  const studioId = db.transaction((tx) => {
-    const stage = setStage(db, tx, calendar, hashes)
+  return wholly(db, async () => {
+    const stage = setStage(db, calendar, hashes)
     const player = new Player(stage)
-    for (const told of toldInOrder(calendar)) told.play(player)
-    return stage.studioId
-  }, { behavior: 'immediate' })
-  return { studioId, signIns: demoSignIns }
+    for (const told of toldInOrder(calendar)) await told.play(player)
+    return { studioId: stage.studioId, signIns: demoSignIns }
+  })
 }
 
-function setStage(db: Database, tx: Transaction, calendar: Calendar, hashes: readonly string[]): Stage {
+/**
+ * All of the work or nothing of it: the services' own transactions become parts of one, and half a demo is never left
+ * behind. Only at boot, while nobody else uses the connection: between the steps others would write into it.
+ */
+async function wholly<T>(db: Database, work: () => Promise<T>): Promise<T> {
+  db.$client.exec('begin immediate')
+  try {
+    const done = await work()
+    db.$client.exec('commit')
+    return done
+  }
+  catch (error) {
+    db.$client.exec('rollback')
+    throw error
+  }
+}
+
+function setStage(db: Database, calendar: Calendar, hashes: readonly string[]): Stage {
   const madeAt = calendar.at(-30, '9:00')
-  const { id: studioId } = tx.insert(studio).values({ name: studioName, zone: calendar.zone.name, demo: true, madeAt }).returning({ id: studio.id }).get()
-  seedLibrary(tx, studioId)
-  tx.insert(openHours).values(calendar.openWeekdays.map(weekday => ({ studioId, weekday, fromMin: opens, toMin: closes }))).run()
-  return { db, studioId, calendar, people: addPeople(tx, studioId, hashes), ...addPlaces(tx, studioId) }
+  const { id: studioId } = db.insert(studio).values({ name: studioName, zone: calendar.zone.name, demo: true, madeAt }).returning({ id: studio.id }).get()
+  seedLibrary(db, studioId)
+  db.insert(openHours).values(calendar.openWeekdays.map(weekday => ({ studioId, weekday, fromMin: opens, toMin: closes }))).run()
+  return { db, studioId, calendar, people: addPeople(db, studioId, hashes), ...addPlaces(db, studioId) }
 }

@@ -1,6 +1,6 @@
 import { member, memberStepKind, person } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
-import type { Transaction } from '~~/server/utils/database'
+import type { Database } from '~~/server/utils/database'
 import type { Role, StepKind } from '#shared/terms'
 
 export interface SignIn { role: Role, name: string, email: string, password: string }
@@ -24,12 +24,12 @@ export const demoSignIns: readonly SignIn[] = people.filter(({ key }) => key !==
 export const demoPasswords: readonly string[] = people.map(each => each.password)
 
 /** Writes the four people of the demo and answers who they are to the services. */
-export function addPeople(tx: Transaction, studioId: number, hashes: readonly string[]): Record<DemoKey, Membership> {
+export function addPeople(db: Database, studioId: number, hashes: readonly string[]): Record<DemoKey, Membership> {
   const members = people.map((each, index): [DemoKey, Membership] => {
     const { name, email, role, stepKinds } = each
-    const personId = tx.insert(person).values({ name, email, passwordHash: hashes[index] ?? '', demo: true }).returning({ id: person.id }).get().id
-    const { id } = tx.insert(member).values({ studioId, personId, role }).returning({ id: member.id }).get()
-    if (stepKinds.length > 0) tx.insert(memberStepKind).values(stepKinds.map(kind => ({ studioId, memberId: id, kind }))).run()
+    const personId = db.insert(person).values({ name, email, passwordHash: hashes[index] ?? '', demo: true }).returning({ id: person.id }).get().id
+    const { id } = db.insert(member).values({ studioId, personId, role }).returning({ id: member.id }).get()
+    if (stepKinds.length > 0) db.insert(memberStepKind).values(stepKinds.map(kind => ({ studioId, memberId: id, kind }))).run()
     return [each.key, { id, role, stepKinds: [...stepKinds] }]
   })
   const found = (key: DemoKey) => {

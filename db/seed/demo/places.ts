@@ -1,5 +1,5 @@
 import { place, room } from '~~/db/schema'
-import type { Transaction } from '~~/server/utils/database'
+import type { Database } from '~~/server/utils/database'
 import type { PlaceKind } from '#shared/terms'
 
 export type RoomKey = 'bench' | 'workshop' | 'spray' | 'yard'
@@ -35,11 +35,11 @@ const placeKeys = Object.keys(placeRows) as PlaceKey[]
 export interface Places { rooms: Record<RoomKey, number>, places: Record<PlaceKey, number> }
 
 /** Writes the rooms and places of the demo: a heated bench room, an unheated workshop, a spray room and a covered yard. */
-export function addPlaces(tx: Transaction, studioId: number): Places {
-  const roomIds = Object.fromEntries(roomKeys.map((key, sort) => [key, tx.insert(room).values({ studioId, sort, ...rooms[key] }).returning({ id: room.id }).get().id])) as Record<RoomKey, number>
+export function addPlaces(db: Database, studioId: number): Places {
+  const roomIds = Object.fromEntries(roomKeys.map((key, sort) => [key, db.insert(room).values({ studioId, sort, ...rooms[key] }).returning({ id: room.id }).get().id])) as Record<RoomKey, number>
   const placeIds = Object.fromEntries(placeKeys.map((key, sort) => {
     const [roomKey, name, kind, capacity] = placeRows[key]
-    return [key, tx.insert(place).values({ studioId, roomId: roomIds[roomKey], name, kind, capacity, sort }).returning({ id: place.id }).get().id]
+    return [key, db.insert(place).values({ studioId, roomId: roomIds[roomKey], name, kind, capacity, sort }).returning({ id: place.id }).get().id]
   })) as Record<PlaceKey, number>
   return { rooms: roomIds, places: placeIds }
 }

@@ -3,10 +3,12 @@ import { finishingSchedule, part, piece, ragDuty } from '~~/db/schema'
 import type { Calendar } from '~~/db/seed/demo/calendar'
 import type { DemoKey } from '~~/db/seed/demo/people'
 import type { PlaceKey, Places, RoomKey } from '~~/db/seed/demo/places'
+import { atOnce, replan } from '~~/server/planning/replan'
 import { recordAct } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { correctAct } from '~~/server/services/corrections'
 import { answerRags } from '~~/server/services/rags'
+import { pieceStates } from '~~/server/services/piece-states'
 import { addReading } from '~~/server/services/readings'
 import type { Membership } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
@@ -14,13 +16,14 @@ import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
 import type { ActRequest, CorrectionRequest, TellableKind } from '#shared/schemas/act'
 import type { BatchRequest } from '#shared/schemas/batch'
+import type { PieceState } from '#shared/schemas/piece-state'
 import type { ReadingRequest } from '#shared/schemas/reading'
 
 /** The stage on which the invented weeks are played, through the product's own services and no other way. */
 export interface Stage extends Places { db: Database, studioId: number, calendar: Calendar, people: Record<DemoKey, Membership> }
 
 /** One thing that somebody told, at the instant it was told (ms UTC). */
-export interface Told { at: number, play: (player: Player) => void }
+export interface Told { at: number, play: (player: Player) => void | Promise<void> }
 
 export interface Start extends Pick<BatchRequest, 'name' | 'pieces'> {
   at: number
@@ -109,6 +112,23 @@ export class Player {
     if (open) this.#done('rags', answerRags(db, studioId, people[by].id, open.id, answer, at))
   }
 
+  /** The studio is planned anew, as it is after every change. */
+  async plan(at: number) {
+    const { db, studioId } = this.stage
+    const planned = await replan(db, studioId, at, atOnce)
+    if (!planned.ok) throw new Error(`The demo could not be planned: ${planned.message}`)
+  }
+
+  /** Somebody goes through what was planned and says what has not gone on yet; of one batch nobody speaks. */
+  answerSilence(at: number, by: DemoKey, silentBatch: string) {
+    const { db, studioId, people } = this.stage
+    for (const { batch, step, pieces } of silentSteps(pieceStates(db, studioId, null), at)) {
+      if (batch === silentBatch) continue
+      const versions = pieceStates(db, studioId, pieces).map(({ id, version }) => ({ id, version }))
+      this.#done(`${batch}, not on yet`, recordAct(db, studioId, { member: people[by] }, { clientKey: this.key(), kind: 'not on yet', doneAt: iso(at), pieces: versions, body: { step } }, at))
+    }
+  }
+
   #pieces(batch: string, chosen: readonly number[] | undefined) {
     const { db, studioId } = this.stage
     const ids = this.#batches.get(batch)?.pieceIds ?? []
@@ -126,6 +146,19 @@ export class Player {
     if (!answer.ok) throw new Error(`The demo's own services refuse "${what}": ${answer.message}`)
     return answer
   }
+}
+
+/** Coats and glue-ups whose planned start has passed in silence, by batch and step. */
+function silentSteps(pieces: readonly PieceState[], at: number) {
+  const silent = new Map<string, { batch: string, step: string, pieces: number[] }>()
+  for (const piece of pieces) {
+    for (const { kind, status, step, plan } of piece.turns) {
+      if (kind !== 'work' || status !== 'waiting' || (step.kind !== 'coat' && step.kind !== 'glue-up') || !plan || plan.dueAt > at) continue
+      const known = silent.get(`${piece.batch.id} ${step.key}`) ?? { batch: piece.batch.name, step: step.key, pieces: [] }
+      silent.set(`${piece.batch.id} ${step.key}`, { ...known, pieces: [...known.pieces, piece.id] })
+    }
+  }
+  return [...silent.values()]
 }
 
 const toldAt = (given: Pick<Tell, 'at' | 'toldAfterMin'>) => given.at + (given.toldAfterMin ?? 3) * minute

@@ -1,8 +1,12 @@
 import { beforeAll, describe, expect, it } from 'vitest'
+import { eq } from 'drizzle-orm'
+import { studio } from '~~/db/schema'
 import { seedDemo } from '~~/db/seed/demo'
 import { pieceStates } from '~~/server/services/piece-states'
 import { placeStates, roomStates } from '~~/server/services/room-states'
 import { listRags } from '~~/server/services/rags'
+import { studioState } from '~~/server/services/studio-state'
+import { foldPieces, refold } from '~~/server/work/refold'
 import type { Database } from '~~/server/utils/database'
 import { readPiece } from '#shared/verdict/piece'
 import type { ReadPiece } from '#shared/verdict/piece'
@@ -24,7 +28,15 @@ async function openStudio(at: string, zone: string) {
   const { studioId } = await seedDemo(db, now, zone)
   const where = { rooms: roomStates(db, studioId, now), places: placeStates(db, studioId) }
   const pieces = pieceStates(db, studioId, null).map(piece => readPiece(piece, where, now, null))
-  return { db, now, studioId, where, pieces }
+  const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
+  if (!owner) throw new Error('There is no demo studio.')
+  return { db, now, studioId, where, pieces, hours: studioState(db, owner, now).hours }
+}
+
+/** Every row that is a fold of acts; the version counts refolds and is left aside. */
+function foldedRows(db: Database) {
+  const tables = ['piece_step', 'step_target', 'step_link', 'turn', 'coat', 'coat_target', 'doubt', 'touch_test', 'stay', 'air_note', 'branch', 'part', 'piece']
+  return tables.map(table => db.$client.prepare<[], Record<string, unknown>>(`select * from "${table}" order by 1, 2, 3`).all().map(({ version: _, ...row }) => row))
 }
 
 const named = (pieces: readonly ReadPiece[], name: string) => pieces.filter(each => each.piece.name.startsWith(name))
@@ -65,6 +77,41 @@ describe.each(moments)('the demo studio, made on %s', (_, at, zone) => {
     expect(covers).toHaveLength(6)
     for (const cover of covers) expect(turnOf(cover, 'sand-1')?.state).toBe('may begin')
     expect(Math.max(...covers.map(each => each.piece.name.length))).toBe(60)
+  })
+
+  it('has a coat that is due and that nobody has spoken of', () => {
+    const due = demo.pieces.filter(each => each.verdict.reason.code === 'coat due')
+    expect(due.map(each => each.piece.name)).toEqual(['Dusk panel 1', 'Dusk panel 2'])
+    for (const panel of due) expect(panel.turns.map(each => each.turn.step.key)).toEqual(['back'])
+  })
+
+  it('tells the last moment to start where that moment lies in working hours', () => {
+    const starts = demo.pieces.flatMap(each => (each.next?.kind === 'start by' ? [each.next] : []))
+    const inHours = demo.hours.some(span => span.opensAt <= demo.now && demo.now + 60 * minutes <= span.closesAt)
+    if (inHours) expect(Math.min(...starts.map(start => start.at - demo.now))).toBeLessThan(75 * minutes)
+    expect(starts.every(start => start.shutsAt === null || start.at <= start.shutsAt)).toBe(true)
+  })
+
+  it('is open today, in the middle of five working days', () => {
+    expect(demo.hours).toHaveLength(1)
+  })
+
+  it('has eight batches here, some history, and a piece on a way of its own', () => {
+    expect(new Set(demo.pieces.map(each => each.piece.batch.name)).size).toBe(8)
+    const of = (question: string) => demo.db.$client.prepare<[], { n: number }>(question).get()?.n ?? 0
+    expect(of('select count(*) as n from piece where gone_at is not null')).toBe(3)
+    expect(of('select count(*) as n from act where replaces_act_id is not null')).toBeGreaterThanOrEqual(2)
+    expect(of('select count(*) as n from touch_test where reached = 1')).toBeGreaterThanOrEqual(1)
+    expect(of('select count(*) as n from touch_test where reached = 0')).toBeGreaterThanOrEqual(1)
+    expect(of('select count(*) as n from branch where rejoined_act_id is null')).toBe(1)
+  })
+
+  it('stands exactly as its acts make it', () => {
+    const ids = demo.pieces.map(each => each.piece.id)
+    const before = foldedRows(demo.db)
+    demo.db.transaction(tx => refold(tx, demo.studioId, ids))
+    expect(foldedRows(demo.db)).toEqual(before)
+    expect(foldPieces(demo.db, demo.studioId, ids).flatMap(each => each.folded.problems)).toEqual([])
   })
 
   it('asks where the oily rags of today are', () => {

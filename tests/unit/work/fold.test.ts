@@ -47,6 +47,12 @@ describe('a piece folded from its acts', () => {
     expect(folded.steps[2]?.status).toBe('resting')
   })
 
+  it('keeps a round before what follows it until its last coat is on', () => {
+    const twice: Seed = { parts: [part], steps: [step('shellac', 1, { turns: [waitingTurn(1, 5), waitingTurn(2, 5)] }), step('polish', 2)], links: [link('shellac', 'polish')] }
+    const polishAtFront = (coats: number) => fold(twice, Array.from({ length: coats }, (_, i) => act('coat on', (i + 1) * hour, { step: 'shellac' }))).steps[1]?.atFront
+    expect([0, 1, 2].map(polishAtFront)).toEqual([false, false, true])
+  })
+
   it('keeps and lists an act that cannot be true', () => {
     const extra = act('coat on', 2 * hour, { step: 'gesso' })
     expect(fold(seed, [gesso(), extra]).problems).toEqual([{ actId: extra.rootId, why: 'nothing left to do' }])

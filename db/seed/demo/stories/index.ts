@@ -48,6 +48,20 @@ function varnishing(calendar: Calendar, benchAir: RoomAir): Varnishing {
   throw new Error('No varnish of the demo can be made to shut its window now.')
 }
 
+/**
+ * Yesterday's plan gave the panels a coat that nobody has spoken of since; of all else that it meant, somebody says
+ * what has not gone on. Then today's plan.
+ */
+function planning({ at, desk, now }: Calendar): Told[] {
+  const plannedAt = at(-1, '10:45')
+  const askedAt = desk(6)
+  return [
+    { at: plannedAt, play: player => player.plan(plannedAt) },
+    { at: askedAt, play: player => player.answerSilence(askedAt, 'maker', 'Dusk panel') },
+    { at: now, play: player => player.plan(now) },
+  ]
+}
+
 /** Everything that was told in the demo's weeks, in the order of telling. */
 export function toldInOrder(calendar: Calendar): Told[] {
   const notes = airNotes(calendar)
@@ -55,7 +69,7 @@ export function toldInOrder(calendar: Calendar): Told[] {
   const { books, framesAt } = varnishing(calendar, benchAir)
   const told = [
     ...airTold(notes), ...boards(calendar), ...almanac(calendar, books), ...skylight(calendar, framesAt), ...covers(calendar),
-    ...bowls(calendar), ...boxes(calendar), ...lutes(calendar), ...dresser(calendar), ...panels(calendar),
+    ...planning(calendar), ...bowls(calendar), ...boxes(calendar), ...lutes(calendar), ...dresser(calendar), ...panels(calendar),
   ]
   return told.sort((a, b) => a.at - b.at)
 }

@@ -27,6 +27,7 @@ export function skylight({ at }: Calendar, oiledAt: number): Told[] {
     correct({ at: at(-5, '12:05'), by: 'owner', label: 'frames oiled', doneAt: at(-5, '11:20') }),
     check('oil-1', at(-5, '11:50'), { by: 'owner' }),
     say('moved', at(-5, '12:10'), { by: 'owner', parts: ['rails'], place: 'rack' }),
+    work('glass', at(-5, '15:20'), { by: 'owner' }),
     { at: at(-5, '17:20'), play: player => player.rags('bench', 'owner', at(-5, '17:20'), 'flat outdoors') },
     work('scuff', oiledAt - 45 * minute, { by: 'owner' }),
     coat('oil-2', oiledAt, { by: 'owner' }),
