@@ -34,8 +34,10 @@ export function ensureBuild() {
   const built = '.output/nitro.json'
   if (existsSync(built) && Math.max(...sources.map(newest)) <= statSync(built).mtimeMs) return
   // The same build whoever asks: a test runner's variables would make it another one.
-  const { VITEST: _vitest, TEST: _test, ...env } = process.env
-  run(process.execPath, ['node_modules/nuxt/bin/nuxt.mjs', 'build'], { env: { ...env, NODE_ENV: 'production', NUXT_TELEMETRY_DISABLED: '1' } })
+  const env = { ...process.env, NODE_ENV: 'production', NUXT_TELEMETRY_DISABLED: '1' }
+  delete env.VITEST
+  delete env.TEST
+  run(process.execPath, ['node_modules/nuxt/bin/nuxt.mjs', 'build'], { env })
 }
 
 export function findBrowser() {

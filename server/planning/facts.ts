@@ -55,4 +55,3 @@ function readLast(db: Database, studioId: number) {
 export function materialsToCome(facts: PlanFacts): number[] {
   return [...new Set(facts.steps.flatMap(step => step.materialVersionId ?? []))]
 }
-

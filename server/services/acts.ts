@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
+import { and, asc, eq, inArray } from 'drizzle-orm'
 import { act, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
@@ -153,4 +153,3 @@ function stepsNamed(tx: Transaction, studioId: number, pieceIds: readonly number
     .leftJoin(stepTarget, and(eq(stepTarget.stepId, pieceStep.id), eq(stepTarget.studioId, studioId)))
     .where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, [...pieceIds]), eq(pieceStep.key, key))).all()
 }
-

@@ -15,8 +15,8 @@ export function rateText(rate: RateWire, units: 'metric' | 'us' = 'metric'): str
   const head = `${rate.material}, towards ${milestoneText(rate.towards)}`
   if (rate.factor <= 0.005) return `${head}: stands still at ${warmth(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
   const causes = [
-    ...counts(rate.warmth) && rate.warmth < 1 === rate.factor < 1 ? [warmth(rate.tempC, units)] : [],
-    ...counts(rate.damp) && rate.damp < 1 === rate.factor < 1 ? [percent(rate.rh)] : [],
+    ...counts(rate.warmth) && (rate.warmth < 1) === (rate.factor < 1) ? [warmth(rate.tempC, units)] : [],
+    ...counts(rate.damp) && (rate.damp < 1) === (rate.factor < 1) ? [percent(rate.rh)] : [],
   ]
   if (!counts(rate.factor) || causes.length === 0) return `${head}: as fast as its sheet says, at ${warmth(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
   return `${head}: ${rate.factor.toFixed(2)} of sheet speed: ${causes.join(', ')}${air}.`

@@ -60,7 +60,7 @@ describe('why a film dries as fast as it does', () => {
   it('names the cause that pulls the same way', () => {
     const rate = { coatId: 1, material: 'Acrylic gesso', towards: 'dry-to-handle' as const, factor: 0.41, warmth: 1, damp: 0.41, tempC: 20, rh: 0.78, assumed: false, sheetTempC: 20, sheetRh: 0.5 }
     expect(rateText(rate)).toBe('Acrylic gesso, towards dry to handle: 0.41 of sheet speed: 78 % humidity.')
-    expect(rateText({ ...rate, factor: 0.3, warmth: 0.7 , tempC: 12 }, 'us')).toBe('Acrylic gesso, towards dry to handle: 0.30 of sheet speed: 54 °F, 78 % humidity.')
+    expect(rateText({ ...rate, factor: 0.3, warmth: 0.7, tempC: 12 }, 'us')).toBe('Acrylic gesso, towards dry to handle: 0.30 of sheet speed: 54 °F, 78 % humidity.')
     expect(rateText({ ...rate, factor: 1.02, damp: 1.02, rh: 0.49 })).toBe('Acrylic gesso, towards dry to handle: as fast as its sheet says, at 20 °C, 49 % humidity.')
     expect(rateText({ ...rate, factor: 0, warmth: 0, tempC: 2 })).toBe('Acrylic gesso, towards dry to handle: stands still at 2 °C, 78 % humidity.')
   })
