@@ -18,13 +18,13 @@ export function storeSteps(tx: Transaction, studioId: number, pieceId: number, f
   for (const step of change.added) {
     const stepId = tx.insert(pieceStep).values({ studioId, pieceId, ...columns(step) }).returning({ id: pieceStep.id }).get().id
     ids.set(step.key, stepId)
-    if (step.targets.length > 0) tx.insert(stepTarget).values(step.targets.map(target => ({ studioId, stepId, ...target }))).run()
   }
   const idOf = (key: string) => {
     const found = ids.get(key)
     if (found === undefined) throw new Error(`The fold of piece ${pieceId} names the step ${key}, which it does not have.`)
     return found
   }
+  storeTargets(tx, studioId, [...ids.values()], folded, idOf)
   storeLinks(tx, studioId, [...ids.values()], folded, idOf)
   const turns = storeTurns(tx, studioId, [...ids.values()], folded, idOf)
   return {
@@ -34,6 +34,17 @@ export function storeSteps(tx: Transaction, studioId: number, pieceId: number, f
       if (change.removed.length > 0) tx.delete(pieceStep).where(scoped(pieceStep, studioId, inArray(pieceStep.id, change.removed.map(row => row.id)))).run()
     },
   }
+}
+
+/** A correction may put an unplanned coat on other faces, so the targets of a step that stays can change too. */
+function storeTargets(tx: Transaction, studioId: number, stepIds: number[], folded: Folded, idOf: (key: string) => number) {
+  const rows = stepIds.length === 0 ? [] : tx.select().from(stepTarget).where(scoped(stepTarget, studioId, inArray(stepTarget.stepId, stepIds))).all()
+  const wanted = folded.steps.flatMap(step => step.targets.map(target => ({ studioId, stepId: idOf(step.key), ...target })))
+  const keyOf = (target: { stepId: number, partId: number, faceId: number | null }) => `${target.stepId} ${target.partId} ${target.faceId}`
+  const kept = new Set(folded.steps.map(step => idOf(step.key)))
+  const change = difference(rows.filter(row => kept.has(row.stepId)), wanted, keyOf, keyOf, holds)
+  if (change.removed.length > 0) tx.delete(stepTarget).where(scoped(stepTarget, studioId, inArray(stepTarget.id, change.removed.map(row => row.id)))).run()
+  if (change.added.length > 0) tx.insert(stepTarget).values(change.added).run()
 }
 
 function storeLinks(tx: Transaction, studioId: number, stepIds: number[], folded: Folded, idOf: (key: string) => number) {

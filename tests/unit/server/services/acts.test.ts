@@ -1,4 +1,6 @@
+import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
+import { face, part, pieceStep, stepTarget } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import { correctAct } from '~~/server/services/corrections'
 import { startBatch } from '~~/server/services/batches'
@@ -74,6 +76,19 @@ describe('a correction', () => {
     expect(after?.coatId).toBe(before?.coatId)
     expect(after?.endedAt).toBe(now - 70 * minute)
     expect(after?.milestones[0]?.likelyAt).toBeLessThan(before?.milestones[0]?.likelyAt ?? 0)
+  })
+
+  it('puts an unplanned coat, its step and its film on the faces it names', () => {
+    const studio = withBatch(1)
+    const [lid] = studio.db.select().from(part).where(eq(part.key, 'lid')).all()
+    const pieces = pieceStates(studio.db, studio.studioId, studio.pieceIds).map(({ id, version }) => ({ id, version }))
+    const body = { step: null, materialVersionId: studio.materialOf('chalk-paint') }
+    const told = recordAct(studio.db, studio.studioId, { member: studio.members.maker }, { clientKey: 'unplanned-1', kind: 'coat on', doneAt: iso(now), pieces, partIds: [lid?.id ?? 0], body: { ...body, faces: ['top'] } }, now)
+    if (!told.ok) throw new Error(told.message)
+    const targets = () => studio.db.select({ face: face.key }).from(stepTarget).innerJoin(face, eq(face.id, stepTarget.faceId)).innerJoin(pieceStep, eq(pieceStep.id, stepTarget.stepId)).where(eq(pieceStep.origin, 'unplanned')).all()
+    expect(targets()).toEqual([{ face: 'top' }])
+    expect(correctAct(studio.db, studio.studioId, { member: studio.members.maker }, told.actId, { clientKey: 'other-face', body: { ...body, faces: ['underside'] } }, now)).toMatchObject({ ok: true })
+    expect(targets()).toEqual([{ face: 'underside' }])
   })
 
   it('taken back leaves no coat and gives the turn back', () => {
