@@ -1,5 +1,5 @@
 import { and, eq, inArray, isNull } from 'drizzle-orm'
-import { coat, intake, keepOut, materialVersion, part, place, ragDuty, room, stay } from '~~/db/schema'
+import { coat, coatTarget, intake, keepOut, materialVersion, part, place, ragDuty, room, stay } from '~~/db/schema'
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { predictPieces } from '~~/server/work/predict'
@@ -25,11 +25,14 @@ function answerIntake(tx: Transaction, studioId: number, told: Told) {
 
 /** A solvent film in the spray area shuts the room; a drying oil leaves rags. Both are per room, once. */
 function noteVapourAndRags(tx: Transaction, studioId: number, told: Told) {
-  const coats = tx.select({ endedAt: coat.endedAt, solvent: materialVersion.solvent, dryingOil: materialVersion.dryingOil, roomId: room.id, sprayArea: room.sprayArea })
-    .from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId))
-    .innerJoin(part, eq(part.pieceId, coat.pieceId)).innerJoin(stay, and(eq(stay.partId, part.id), isNull(stay.toAt)))
-    .innerJoin(place, eq(place.id, stay.placeId)).innerJoin(room, eq(room.id, place.roomId))
+  const films = tx.select({ endedAt: coat.endedAt, solvent: materialVersion.solvent, dryingOil: materialVersion.dryingOil, partId: coatTarget.partId })
+    .from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId)).innerJoin(coatTarget, eq(coatTarget.coatId, coat.id))
     .where(scoped(coat, studioId, eq(coat.actId, told.actId), inArray(coat.pieceId, told.pieceIds))).all()
+  const roomOf = roomsOfParts(tx, studioId, told.pieceIds)
+  const coats = films.flatMap((film) => {
+    const where = roomOf(film.partId)
+    return where ? [{ ...film, ...where }] : []
+  })
   const rooms = new Map<number, { endedAt: number, shuts: boolean, rags: boolean }>()
   for (const each of coats) {
     const known = rooms.get(each.roomId) ?? { endedAt: 0, shuts: false, rags: false }
@@ -42,6 +45,19 @@ function noteVapourAndRags(tx: Transaction, studioId: number, told: Told) {
   for (const [roomId, { endedAt, shuts, rags }] of rooms) {
     if (shuts) shutRoom(tx, studioId, roomId, endedAt, told)
     if (rags) askForRags(tx, studioId, roomId, endedAt, told)
+  }
+}
+
+/** The room each part stands in; a part joined to another stands where that one does. Other parts of the piece may be elsewhere. */
+function roomsOfParts(tx: Transaction, studioId: number, pieceIds: readonly number[]) {
+  const parts = tx.select({ id: part.id, into: part.intoPartId, roomId: room.id, sprayArea: room.sprayArea }).from(part)
+    .leftJoin(stay, and(eq(stay.partId, part.id), isNull(stay.toAt))).leftJoin(place, eq(place.id, stay.placeId)).leftJoin(room, eq(room.id, place.roomId))
+    .where(scoped(part, studioId, inArray(part.pieceId, [...pieceIds]))).all()
+  const byId = new Map(parts.map(each => [each.id, each]))
+  return (partId: number): { roomId: number, sprayArea: boolean } | null => {
+    let found = byId.get(partId)
+    for (let depth = 0; found && found.into !== null && depth < parts.length; depth++) found = byId.get(found.into)
+    return found && found.roomId !== null && found.sprayArea !== null ? { roomId: found.roomId, sprayArea: found.sprayArea } : null
   }
 }
 
