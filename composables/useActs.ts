@@ -33,11 +33,15 @@ export function useActs() {
     }
   }
 
-  /** Takes an act back, or moves it in time: `{ takeBack: true }` or `{ doneAt }`. */
-  async function correct(actId: number, change: { doneAt?: number, takeBack?: boolean, pieces?: number[] }): Promise<void> {
+  /**
+   * Takes an act back, or moves it in time: `{ takeBack: true }` or `{ doneAt }`.
+   * @returns the act that now stands for it: the next correction is one of that
+   */
+  async function correct(actId: number, change: { doneAt?: number, takeBack?: boolean, pieces?: number[] }): Promise<number> {
     const body = { clientKey: newClientKey(), ...change, ...change.doneAt === undefined ? {} : { doneAt: new Date(change.doneAt).toISOString() } }
-    await $fetch(`/api/acts/${actId}/correct`, { method: 'POST', body })
+    const answer = await $fetch<{ actId: number }>(`/api/acts/${actId}/correct`, { method: 'POST', body })
     await studio.load()
+    return answer.actId
   }
 
   return { tell, correct, busy, last }

@@ -2,8 +2,8 @@ import * as z from 'zod/mini'
 import type { MilestoneName } from '#shared/terms'
 import { fields } from '#shared/words/rates'
 
-/** GET /api/rates?coats=3,4: at most 20 coats. */
-export const ratesQuery = z.object({ coats: z.string(fields.coats).check(z.regex(/^[1-9]\d{0,9}(,[1-9]\d{0,9}){0,19}$/, fields.coats)) })
+/** GET /api/rates?coats=3,4: at most 20 coats; none named, none explained. */
+export const ratesQuery = z.object({ coats: z._default(z.string(fields.coats).check(z.regex(/^([1-9]\d{0,9}(,[1-9]\d{0,9}){0,19})?$/, fields.coats)), '') })
 
 /**
  * What the speed of a film comes from now. `factor` against its sheet: 0.41 takes 1/0.41 as long. `warmth` and `damp`

@@ -51,6 +51,12 @@ function readTurn(piece: PieceState, turn: TurnState, where: Whereabouts, now: n
   return { turn, begin, late, state }
 }
 
+/** The next moment of one turn alone, for a list of work: chosen as a piece's own is, without its verdict. */
+export function turnMoment(turn: ReadTurn, now: number, heardAt: number | null): NextMoment | null {
+  const facts = { verdict: { betterAt: null, betterKind: null, betterGrip: null }, lastStarts: lastStarts([turn]), mayBegins: beginnings([turn], now), checks: checks([turn]) }
+  return nextMoment(facts, now, heardAt)
+}
+
 function lastStarts(turns: readonly ReadTurn[]): LastStart[] {
   return turns.flatMap(({ turn, begin }): LastStart[] => {
     const { plan } = turn

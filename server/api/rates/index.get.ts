@@ -6,5 +6,5 @@ import { ratesQuery } from '#shared/schemas/rate'
 export default defineStudioHandler({
   may: 'read the studio',
   query: ratesQuery,
-  run: ({ db, studio, query, now }) => ratesOf(db, studio.id, query.coats.split(',').map(Number), now),
+  run: ({ db, studio, query, now }) => ratesOf(db, studio.id, query.coats.split(',').filter(Boolean).map(Number), now),
 })

@@ -60,7 +60,7 @@ export const routes: Record<string, RouteCase> = {
   // Nothing is shut in the first studio's room: who may is told so with a conflict.
   'rooms/[id]/open.post.ts': { least: 'maker', apart: 'row', at: 'room', body: () => ({}) },
   'materials/recent.get.ts': { least: 'helper', apart: 'view' },
-  'rates/index.get.ts': { least: 'helper', apart: 'none' },
+  'rates/index.get.ts': { least: 'helper', apart: 'view' },
   'places/index.post.ts': { least: 'maker', apart: 'named', body: place },
   'places/[id].patch.ts': { least: 'maker', apart: 'row', at: 'place', body: () => ({ capacity: 8 }) },
   'places/[id].delete.ts': { least: 'maker', apart: 'row', at: 'place' },

@@ -1,0 +1,188 @@
+import { turnMoment } from '#shared/verdict/piece'
+import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
+import type { BeginReason } from '#shared/verdict/begin'
+import type { NextMoment } from '#shared/verdict/next'
+import { addDays, fromLocal, localDate } from '#shared/time'
+import type { Clock } from '#shared/time'
+import type { MilestoneName, TurnKind } from '#shared/terms'
+import type { FilmState, TurnState } from '#shared/schemas/piece-state'
+
+const minute = 60_000
+/** Work planned to begin within so long counts as now. ms, planning value. */
+const soonMs = 30 * minute
+/** Pieces of one step that become ready further apart than this are separate jobs. ms, planning value. */
+const apartMs = 60 * minute
+
+export const sections = ['now', 'today', 'days', 'waiting'] as const
+export type Section = typeof sections[number]
+
+export interface JobPiece { read: ReadPiece, turn: ReadTurn }
+
+/**
+ * Like work on some pieces, told in one tap. `at` is when hands are wanted, ms UTC; null when nobody can say.
+ * `because` stands in the way (the slowest piece speaks); `tests` is the rung a thumb may speak about.
+ */
+export interface Job {
+  id: string
+  kind: TurnKind
+  turn: TurnState
+  pieces: JobPiece[]
+  section: Section
+  may: boolean
+  because: BeginReason
+  at: number | null
+  moment: NextMoment | null
+  pressing: boolean
+  /** The planned start of a coat or glue-up has passed and nobody has said whether it went on. */
+  due: boolean
+  tests: MilestoneName | null
+}
+
+/** What kind of state a turn is in: pieces in different ones are never one job. */
+function phaseOf({ turn, begin, state }: ReadTurn): string {
+  if (turn.kind !== 'work') return 'timed'
+  if (state === 'set aside') return `aside ${turn.step.asideReason ?? ''}`
+  if (turn.status === 'doing') return `doing ${turn.doing?.by ?? ''}`
+  if (begin.because.code === 'doubt' || begin.because.code === 'window shut') return begin.because.code
+  return begin.from === null && !begin.may ? 'stuck' : 'timed'
+}
+
+const wantedFrom = ({ turn, begin }: ReadTurn) => (turn.kind === 'work' ? begin.from : turn.wantedAt)
+
+/** Splits pieces of one step where their times lie far apart; what is past counts as now. */
+function clusters(pieces: readonly JobPiece[], now: number): JobPiece[][] {
+  const from = (each: JobPiece) => Math.max(wantedFrom(each.turn) ?? now, now)
+  const sorted = [...pieces].sort((a, b) => from(a) - from(b))
+  const found: JobPiece[][] = []
+  for (const each of sorted) {
+    const last = found.at(-1)
+    const before = last?.at(-1)
+    if (last && before && from(each) - from(before) <= apartMs) last.push(each)
+    else found.push([each])
+  }
+  return found
+}
+
+function keyOf({ read, turn }: JobPiece, sharedSessions: ReadonlySet<string>): string {
+  const { kind, step, no, plan } = turn.turn
+  const session = `${plan?.sessionId} ${step.key}`
+  const together = plan && plan.sessionId !== null && sharedSessions.has(session) ? `session ${session}` : `batch ${read.piece.batch.id} ${step.key}`
+  return [together, kind, no, phaseOf(turn)].join(' | ')
+}
+
+/** Sessions in which one step key comes from several batches: only those join what the batches keep apart. */
+function findShared(all: readonly JobPiece[]): Set<string> {
+  const batches = new Map<string, Set<number>>()
+  for (const { read, turn: { turn } } of all) {
+    if (!turn.plan || turn.plan.sessionId === null) continue
+    const key = `${turn.plan.sessionId} ${turn.step.key}`
+    batches.set(key, (batches.get(key) ?? new Set()).add(read.piece.batch.id))
+  }
+  return new Set([...batches].filter(([, ids]) => ids.size > 1).map(([key]) => key))
+}
+
+/** A coat or glue-up is due whose planned start has passed without a word. */
+function isDue({ turn }: ReadTurn, now: number): boolean {
+  const wets = turn.kind === 'work' && (turn.step.kind === 'coat' || turn.step.kind === 'glue-up')
+  return wets && turn.status === 'waiting' && turn.step.status !== 'set aside' && turn.plan !== null && turn.plan.dueAt <= now && (turn.notOnAt === null || turn.notOnAt < turn.plan.dueAt)
+}
+
+function testedRung({ turn }: ReadTurn): MilestoneName | null {
+  if (turn.kind === 'release') return 'out-of-clamps'
+  const wait = turn.waits.find(each => each.milestone !== null && each.films.some(film => film.hold === null && film.moment?.reachedAt === null))
+  return wait?.milestone ?? null
+}
+
+/** The slowest piece speaks for all: first one that is stuck, else the one that is ready last. */
+function slowest(pieces: readonly JobPiece[]): ReadTurn | undefined {
+  const time = ({ begin }: ReadTurn) => (begin.may ? -Infinity : begin.from ?? Infinity)
+  return pieces.map(each => each.turn).reduce<ReadTurn | undefined>((last, each) => (last === undefined || time(each) > time(last) ? each : last), undefined)
+}
+
+/** The most pressing moment among the pieces: the earliest last start, else the latest beginning, else the first check. */
+function momentOf(pieces: readonly JobPiece[], now: number, heardAt: number | null): NextMoment | null {
+  const moments = pieces.flatMap(each => turnMoment(each.turn, now, heardAt) ?? [])
+  const starts = moments.filter(each => each.kind === 'start by').sort((a, b) => a.at - b.at)
+  const rest = moments.filter(each => each.kind !== 'start by').sort((a, b) => (a.kind === 'check' ? a.at - b.at : b.at - a.at))
+  return starts[0] ?? rest[0] ?? null
+}
+
+function jobOf(id: string, pieces: JobPiece[], clock: Clock, heardAt: number | null): Job | null {
+  const first = pieces[0]?.turn
+  const last = slowest(pieces)
+  if (!first || !last) return null
+  const { now } = clock
+  const phase = phaseOf(first)
+  const timed = phase === 'timed'
+  const may = first.turn.kind === 'work' ? pieces.every(each => each.turn.begin.may) : first.turn.wantedAt !== null && first.turn.wantedAt <= now
+  const due = pieces.some(each => isDue(each.turn, now))
+  const pressing = pieces.some(each => each.turn.late !== null)
+  const starts = pieces.flatMap(each => planned(each.turn, now) ?? [])
+  const at = !timed || starts.length === 0 ? null : Math.max(...starts)
+  const urgent = pressing || due || phase.startsWith('doing') || phase === 'doubt' || phase === 'window shut'
+  const moment = timed ? momentOf(pieces, now, heardAt) : null
+  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due, tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
+}
+
+/** When hands are wanted for one turn: once it may begin, and not before the plan wants it. */
+function planned(read: ReadTurn, now: number): number | null {
+  const from = wantedFrom(read)
+  const plan = read.turn.plan?.startsAt ?? null
+  if (from === null) return read.begin.may ? plan ?? now : null
+  return Math.max(from, plan ?? from)
+}
+
+function sectionOf({ urgent, timed, may, at }: { urgent: boolean, timed: boolean, may: boolean, at: number | null }, clock: Clock): Section {
+  if (urgent) return 'now'
+  if (!timed || at === null) return 'waiting'
+  if (may && at <= clock.now + soonMs) return 'now'
+  const tomorrow = fromLocal(addDays(localDate(clock.now, clock.zone), 1), 0, clock.zone)
+  return at < tomorrow ? 'today' : 'days'
+}
+
+/** Pressing first, by the last moment that can still be kept; then what is being done; then by when hands are wanted. */
+function compare(a: Job, b: Job): number {
+  const rank = (job: Job) => (job.pressing ? 0 : job.due ? 1 : job.turn.status === 'doing' ? 2 : 3)
+  const time = (job: Job) => (job.moment?.kind === 'start by' ? job.moment.at : job.at ?? Infinity)
+  const [first, second] = [time(a), time(b)]
+  return sections.indexOf(a.section) - sections.indexOf(b.section) || rank(a) - rank(b) || (first === second ? 0 : first - second) || (a.id < b.id ? -1 : 1)
+}
+
+/**
+ * What needs hands, in the order to do it: turns of like work put together, each in its section.
+ * @param pieces as `readPiece` reads them
+ * @param heardAt as for `readPiece`
+ */
+export function handsJobs(pieces: readonly ReadPiece[], clock: Clock, heardAt: number | null): Job[] {
+  const all = pieces.flatMap(read => read.turns.map((turn): JobPiece => ({ read, turn })))
+  const shared = findShared(all)
+  const groups = new Map<string, JobPiece[]>()
+  for (const each of all) {
+    const key = keyOf(each, shared)
+    const known = groups.get(key)
+    if (known) known.push(each)
+    else groups.set(key, [each])
+  }
+  const jobs = [...groups.values()].flatMap(group => clusters(group, clock.now)).flatMap((group) => {
+    const inRow = [...group].sort((a, b) => a.read.piece.id - b.read.piece.id)
+    const [head] = inRow
+    return head ? jobOf(`${head.turn.turn.turnId}`, inRow, clock, heardAt) ?? [] : []
+  })
+  return jobs.sort(compare)
+}
+
+/** Names of other pieces in the rooms of a dusty job whose films would still catch the dust at `now` (ms UTC). */
+export function wetBeside(job: Job, pieces: readonly ReadPiece[], now: number): string[] {
+  if (job.kind !== 'work' || job.turn.dust === 'none') return []
+  const own = new Set(job.pieces.map(each => each.read.piece.id))
+  const rooms = new Set(job.pieces.flatMap(each => each.read.piece.groups.map(group => group.roomId)))
+  return pieces.filter(({ piece }) => !own.has(piece.id) && piece.groups.some(group => group.roomId !== null && rooms.has(group.roomId) && group.films.some(film => film.kind !== 'glue-up' && catchesDust(film, now))))
+    .map(({ piece }) => piece.name)
+}
+
+function catchesDust(film: FilmState, now: number): boolean {
+  const rung = film.milestones.find(each => each.name === 'dust-free') ?? film.milestones.find(each => each.name === 'tack-free') ?? film.milestones.find(each => each.name === 'dry-to-handle')
+  if (!rung) return film.milestones.length === 0
+  const clear = rung.reachedAt ?? rung.p90At
+  return clear === null || clear > now
+}

@@ -1,0 +1,161 @@
+import type { Job, Section } from '#shared/hands'
+import type { Clock } from '#shared/time'
+import { clockTime, roughTime, span } from '#shared/time'
+import type { FilmState } from '#shared/schemas/piece-state'
+import type { Hold, MilestoneName } from '#shared/terms'
+import type { ReasonCode } from '#shared/drying/types'
+import { groupNames, listText } from '#shared/words/group'
+import { beginReason, momentReason, momentText } from '#shared/words/moments'
+import { lowerFirst, milestoneText } from '#shared/words/steps'
+import { asSentence, limitText, predictionReason } from '#shared/words/verdict'
+
+/** What the screen of the hands says by itself. */
+export const handsWords = {
+  title: 'Hands',
+  more: 'More',
+  moreOf: (title: string) => `More about ${lowerFirst(title)}`,
+  stopped: 'Stopped, not done',
+  run: 'There is a run',
+  runHint: 'It goes its own way: filled, levelled, then back to the others.',
+  warmHint: 'The times get wider, and this coat teaches nothing about the material.',
+  enoughHint: 'No more coats in this round.',
+  leaveOutHint: 'Not needed on these pieces.',
+  reason: 'Why it is set aside',
+  reasonWanted: 'Say why in a few words, so that the next person knows.',
+  reasonHint: 'Cracked, wrong colour, waiting for a handle',
+  all: (count: number) => (count === 2 ? 'Both' : `All ${count}`),
+  some: (count: number, of: number) => `${count} of ${of}`,
+  which: 'Which of them',
+  none: 'None',
+  noneChosen: 'Choose at least one piece.',
+  noTime: 'Give the time it was done.',
+  where: 'Where they go',
+  asItStands: 'Stays where it stands',
+  othersSteps: 'For others',
+  othersSay: 'Steps the owner has not given to you.',
+  empty: 'Nothing needs hands',
+  emptySays: 'Nothing is drying, clamped or waiting for a step.',
+  startBatch: 'Start a batch',
+  loading: 'Fetching the studio',
+  failed: 'The studio cannot be reached, and nothing of it is known here yet.',
+  stale: 'The studio cannot be reached. This is how it stood when last heard.',
+  show: (count: number) => `Show ${count} more`,
+  openJob: 'Open',
+} as const
+
+const headings: Record<Section, string> = { now: 'Now', today: 'Later today', days: 'Next days', waiting: 'Waiting for something' }
+const nothing: Record<Section, string> = { now: 'Nothing needs hands now.', today: '', days: '', waiting: '' }
+
+export const sectionTitle = (section: Section) => headings[section]
+export const sectionEmpty = (section: Section) => nothing[section]
+
+const outTitles: Record<Hold, string> = { clamps: 'Out of clamps', press: 'Out of the press', weight: 'Out from under the weight' }
+
+/** "Second varnish", "Shellac, coat 3 of 8", "Out of clamps", "Change the blotters". */
+export function jobTitle({ kind, turn }: Pick<Job, 'kind' | 'turn'>): string {
+  const name = turn.step.name || 'Something outside the schedule'
+  if (kind === 'release') return outTitles[turn.step.hold ?? 'clamps']
+  if (kind === 'check') return turn.name || name
+  if (turn.step.untilEnough) return `${name}, coat ${turn.no}`
+  return turn.of > 1 ? `${name}, coat ${turn.no} of ${turn.of}` : name
+}
+
+/** The pieces of a job, with the part it is about where the piece has several. */
+export function jobNames(job: Pick<Job, 'pieces'>): string {
+  const names = groupNames(job.pieces.map(each => each.read.piece.name))
+  const [first] = job.pieces
+  if (!first) return names
+  const parts = first.read.piece.groups.flatMap(group => group.parts)
+  const own = parts.filter(part => first.turn.turn.partIds.includes(part.partId))
+  return parts.length > 1 && own.length > 0 && own.length < parts.length ? `${names}: ${listText(own.map(part => lowerFirst(part.name)))}` : names
+}
+
+/** "Likely 16:20, give it till 17:05", or why no time can be given. A maker's word leaves no doubt. */
+export function timesText({ likelyAt, p90At, reason, reachedAt }: { likelyAt: number | null, p90At: number | null, reason: ReasonCode | null, reachedAt: number | null }, clock: Clock): string {
+  if (reachedAt !== null) return `tested ${clockTime(reachedAt, clock)}`
+  if (likelyAt === null) return reason ? predictionReason(reason) : 'nobody knows when'
+  if (p90At === null) return `likely ${roughTime(likelyAt, clock, 'up')}${reason ? `, ${predictionReason(reason)}` : ''}`
+  const doubt = Math.max(p90At - likelyAt, likelyAt - clock.now)
+  return `likely ${roughTime(likelyAt, clock, 'up', doubt)}, give it till ${roughTime(p90At, clock, 'up', doubt)}`
+}
+
+function releaseText(job: Job, film: FilmState | null, clock: Clock): string {
+  const rung = film?.milestones.find(each => each.name === 'out-of-clamps')
+  const strength = film?.milestones.find(each => each.name === 'full-strength')
+  const until = strength ? strength.reachedAt ?? strength.p98At : null
+  return [
+    ...rung ? [asSentence(timesText(rung, clock))] : [],
+    ...strength ? [asSentence(limitText({ kind: 'strain', until }, clock))] : [],
+  ].join(' ')
+}
+
+/** The one line that says when: the last moment and its reason, from when it may begin, or what stands in the way. */
+export function jobMoment(job: Job, film: FilmState | null, clock: Clock): string {
+  const { moment, because, turn } = job
+  if (turn.step.status === 'set aside') return asSentence(turn.step.asideReason ? `set aside: ${turn.step.asideReason}` : 'set aside')
+  if (turn.doing) return asSentence(`${turn.doing.by || 'somebody'} has been at it since ${clockTime(turn.doing.sinceAt, clock)}`)
+  if (job.kind === 'release') return releaseText(job, film, clock)
+  if (job.due && turn.plan) return asSentence(`due since ${clockTime(turn.plan.dueAt, clock)}: is it on`).replace(/\.$/, '?')
+  if (moment?.kind === 'start by') {
+    const why = momentReason(moment, clock)
+    return asSentence(why ? `${momentText(moment, clock)}; ${why}` : momentText(moment, clock))
+  }
+  if (job.may) return asSentence(plannedText(job, clock) ?? 'may begin')
+  if (moment?.kind === 'check') return asSentence(momentText(moment, clock))
+  if (moment && !job.may && because.code !== 'role') return asSentence(`${momentText(moment, clock)}; ${beginReason(because)}`)
+  return asSentence(beginReason(because))
+}
+
+function plannedText({ turn, at }: Job, clock: Clock): string | null {
+  if (!turn.plan || at === null || at <= clock.now) return null
+  return `may begin; planned for ${roughTime(at, clock, 'down')}`
+}
+
+/** "25 min" of attended work for the whole job. */
+export function jobMinutes({ turn, pieces, kind }: Job): string {
+  const minutes = (kind === 'work' ? turn.setupMin + turn.cleanMin : 0) + turn.pieceMin * pieces.length
+  return minutes === 0 ? '' : span(minutes)
+}
+
+/** A caution before sanding: whose film would catch the dust. */
+export function dustText(names: readonly string[]): string {
+  return names.length === 1 ? `${names[0]} is wet in the same room: sand at the extractor, wet, or elsewhere.` : `${groupNames(names)} are wet in the same room: sand at the extractor, wet, or elsewhere.`
+}
+
+/** What an act did to a time, with what it was before: "Ready to recoat: likely 16:20, give it till 17:05; before, likely 15:50". */
+export interface Effect { milestone: MilestoneName, likelyAt: number | null, p90At: number | null, reachedAt: number | null, reason: ReasonCode | null }
+
+export function effectText(after: Effect, before: Effect | null, clock: Clock): string {
+  const said = asSentence(`${milestoneText(after.milestone)}: ${timesText(after, clock)}`)
+  const moved = before !== null && before.milestone === after.milestone && (before.likelyAt !== after.likelyAt || before.p90At !== after.p90At) && before.reachedAt === null
+  if (!moved) return said
+  const was = timesText(before, clock)
+  return was === timesText(after, clock) ? said : `${said} It was ${was}.`
+}
+
+/** The sheet that says what was told. */
+export const toldWords = {
+  label: 'Told',
+  at: (fact: string, names: string, time: string) => `${asSentence(fact)} ${names}, ${time}.`,
+  undo: 'Undo',
+  another: 'Another time',
+  move: 'Move it',
+  close: 'Close',
+  undone: (fact: string, names: string) => `Taken back: ${fact}. ${names}.`,
+  later: 'The studio was not reached. It is kept on this device and told as soon as it can be.',
+  again: 'Say it again',
+  leave: 'Leave it',
+  next: (moment: string) => `Next: ${moment}.`,
+  notReached: 'The studio was not reached. Nothing has changed; try again in a moment.',
+  untold: (count: number) => (count === 1 ? 'One tap is not told yet.' : `${count} taps are not told yet.`),
+  untoldSays: 'They are kept on this device and told in their order as soon as the studio is reached.',
+  tellNow: 'Tell them now',
+  refusedSays: (names: string, message: string) => `${names}: ${message}`,
+} as const
+
+/** Oily rags, asked until somebody says. */
+export const ragWords = {
+  ask: (room: string) => `Where are the oily rags from ${room}?`,
+  since: (time: string) => `Oil was last on the rags at ${time}. Heaped rags can set themselves alight.`,
+  answers: { 'flat outdoors': 'Spread flat outdoors', 'in water can': 'In the water can', 'not dealt with': 'Not dealt with yet' },
+} as const
