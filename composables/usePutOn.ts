@@ -1,0 +1,49 @@
+import { piecesByPlace, putOnParts } from '#shared/put-on'
+import type { PutOnPart } from '#shared/put-on'
+import type { RecentMaterialsWire, RecentMaterialWire } from '#shared/schemas/material'
+import { coatSizes, holds } from '#shared/terms'
+import type { CoatSize, Hold } from '#shared/terms'
+import { answeredAt } from '#shared/time'
+import type { TimeAnswer } from '#shared/time'
+import { holdWords, putOnWords, sizeWords } from '#shared/words/put-on'
+
+/** Everything "I put something on" remembers between its taps, and the telling at the end. */
+export function usePutOn(materials: Ref<RecentMaterialsWire | null>) {
+  const { say, busy, studio } = useTelling()
+  const materialId = ref<number | null>(null)
+  const chosen = ref<number[]>([])
+  const when = ref<TimeAnswer | null>({ kind: 'ago', minutes: 0 })
+  const size = ref<CoatSize>('normal')
+  const hold = ref<Hold | 'free'>('free')
+  const problem = ref<string | null>(null)
+
+  const all = computed(() => [...materials.value?.recent ?? [], ...materials.value?.others ?? []])
+  const material = computed((): RecentMaterialWire | null => all.value.find(each => each.versionId === materialId.value) ?? null)
+  const places = computed(() => (studio.state.value ? piecesByPlace(studio.state.value, studio.pieces.value) : []))
+  const reads = computed(() => studio.pieces.value.filter(read => chosen.value.includes(read.piece.id)))
+  const parts = computed(() => (material.value ? putOnParts(reads.value, material.value) : []))
+
+  const sizes = coatSizes.map(value => ({ value, label: sizeWords[value] }))
+  const holdings = [{ value: 'free' as const, label: putOnWords.free }, ...holds.map(value => ({ value, label: holdWords[value] }))]
+
+  /** Tells one part: its step, or no step at all. */
+  async function tellPart({ step, pieces }: PutOnPart, what: RecentMaterialWire, doneAt: number) {
+    const glue = step ? step.kind === 'glue-up' : what.glue
+    const body = { step: step?.key ?? null, materialVersionId: what.versionId, size: size.value, ...step === null ? { name: what.name } : {}, ...glue && hold.value !== 'free' ? { hold: hold.value } : {} }
+    await say({ kind: glue ? 'glue-up on' : 'coat on', body, pieces: pieces.map(read => read.piece), doneAt, step: step?.name ?? null, material: what.name })
+  }
+
+  /** @param asSteps whether pieces that wait for this material take it as the step that waits */
+  async function done(asSteps: boolean) {
+    const what = material.value
+    problem.value = !what ? putOnWords.wantsMaterial : reads.value.length === 0 ? putOnWords.wantsPieces : when.value === null ? putOnWords.wantsTime : null
+    if (problem.value !== null || !what || when.value === null || busy.value) return
+    const doneAt = answeredAt(when.value, studio.now.value)
+    for (const part of asSteps ? parts.value : [{ step: null, pieces: reads.value }]) await tellPart(part, what, doneAt)
+    chosen.value = []
+    when.value = { kind: 'ago', minutes: 0 }
+    size.value = 'normal'
+  }
+
+  return { materialId, chosen, when, size, hold, problem, all, material, places, reads, parts, sizes, holdings, done, busy, studio }
+}

@@ -1,0 +1,107 @@
+import type { InjectionKey } from 'vue'
+import { FetchError } from 'ofetch'
+import { effectOn } from '#shared/effects'
+import type { ActRequest, TellableKind } from '#shared/schemas/act'
+import type { FilmState, PieceState } from '#shared/schemas/piece-state'
+import { milestoneNames } from '#shared/terms'
+import { effectText, toldWords } from '#shared/words/hands'
+import type { Effect } from '#shared/words/hands'
+import { groupNames } from '#shared/words/group'
+import { momentText } from '#shared/words/moments'
+import { actText } from '#shared/words/steps'
+import type { ToldLine } from '~/stores/told'
+
+type Studio = Awaited<ReturnType<typeof useStudio>>
+
+/** What a page tells: the kind, what it says, when, and words for its step or material. */
+export interface Telling { kind: TellableKind, body: ActRequest['body'], pieces: readonly PieceState[], doneAt: number, partIds?: number[], step?: string | null, material?: string | null }
+
+const wets = (kind: TellableKind) => kind === 'coat on' || kind === 'glue-up on'
+
+function factOf({ kind, body, step, material }: Telling): string {
+  const milestone = milestoneNames.find(name => name === body.milestone) ?? null
+  const text = (value: unknown) => (typeof value === 'string' ? value : null)
+  return actText(kind, { step, material, milestone, reached: body.reached === true, reason: text(body.reason), air: kind === 'air' ? body.kind as 'sun' : null })
+}
+
+const problemOf = (error: unknown) => (error instanceof FetchError && typeof error.data?.data?.message === 'string' ? error.data.data.message as string : toldWords.notReached)
+
+function makeTelling(studio: Studio) {
+  const { tell, correct, busy } = useActs()
+  const told = useToldStore()
+  const current = (ids: readonly number[]) => (studio.state.value?.pieces ?? []).filter(piece => ids.includes(piece.id))
+
+  /** The films an act speaks about: those it made, or for a test those on the parts touched. */
+  const filmsFor = (line: Pick<ToldLine, 'kind' | 'rootId' | 'partIds'>) => (film: FilmState) =>
+    wets(line.kind) ? film.actId === line.rootId : film.hold === null && (!line.partIds || film.partIds.some(id => line.partIds?.includes(id)))
+
+  function effectNow(line: Pick<ToldLine, 'kind' | 'rootId' | 'partIds' | 'pieceIds' | 'body'>): Effect | null {
+    const speaks = wets(line.kind) || line.kind === 'touch test' || line.kind === 'air'
+    const rung = line.kind === 'touch test' ? milestoneNames.find(name => name === line.body.milestone) ?? null : null
+    return speaks ? effectOn(current(line.pieceIds), filmsFor(line), rung) : null
+  }
+
+  /** What the times say now, beside what they said before; or the next moment where no time is at stake. */
+  function describe(line: Pick<ToldLine, 'kind' | 'rootId' | 'partIds' | 'pieceIds' | 'body' | 'before'>): { effect: string, now: Effect | null } {
+    const effect = effectNow(line)
+    if (effect) return { effect: effectText(effect, line.before, studio.clock.value), now: effect }
+    const next = studio.pieces.value.find(read => line.pieceIds.includes(read.piece.id))?.next
+    return { effect: next ? toldWords.next(momentText(next, studio.clock.value)) : '', now: null }
+  }
+
+  async function say(telling: Telling) {
+    const pieceIds = telling.pieces.map(piece => piece.id)
+    const base = { kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds, step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt }
+    const before = wets(telling.kind) ? null : effectNow({ ...base, rootId: null })
+    const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds)
+    const blank = { ...base, actId: null, rootId: null, effect: '', before, problem: null }
+    if (answer.outcome === 'later') return told.add({ ...blank, state: 'later' })
+    if (answer.outcome === 'refused') return told.add({ ...blank, state: 'refused', problem: Object.values(answer.fields)[0] ?? answer.message })
+    const line = { ...blank, state: 'told' as const, actId: answer.actId, rootId: answer.actId }
+    const { effect, now } = describe(line)
+    return told.add({ ...line, effect, before: now })
+  }
+
+  async function amend(line: ToldLine, change: { doneAt?: number, takeBack?: boolean }) {
+    if (line.actId === null || busy.value) return
+    busy.value = true
+    try {
+      const actId = await correct(line.actId, change)
+      const moved = { ...line, actId, doneAt: change.doneAt ?? line.doneAt }
+      const { effect, now } = describe(moved)
+      told.change(line.key, change.takeBack ? { state: 'undone', actId: null, problem: null } : { actId, doneAt: moved.doneAt, effect, before: now, problem: null })
+    }
+    catch (error) {
+      told.change(line.key, { problem: problemOf(error) })
+      await studio.reload()
+    }
+    finally {
+      busy.value = false
+    }
+  }
+
+  /** After somebody else was first: the same tap on the pieces as they stand now. */
+  async function again(line: ToldLine) {
+    told.putAway(line.key)
+    await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material })
+  }
+
+  return { say, again, busy, told, undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
+}
+
+type TellingOnPage = ReturnType<typeof makeTelling> & { studio: Studio }
+const key: InjectionKey<TellingOnPage> = Symbol('telling')
+
+/** Lets everything on a page tell acts and read the studio they are about. */
+export function provideTelling(studio: Studio): TellingOnPage {
+  const telling = { ...makeTelling(studio), studio }
+  provide(key, telling)
+  return telling
+}
+
+/** The telling of the page around. */
+export function useTelling(): TellingOnPage {
+  const telling = inject(key)
+  if (!telling) throw new Error('This component belongs on a page that provides telling.')
+  return telling
+}
