@@ -8,8 +8,7 @@ import type { TimeAnswer } from '#shared/time'
 import { holdWords, putOnWords, sizeWords } from '#shared/words/put-on'
 
 /** Everything "I put something on" remembers between its taps, and the telling at the end. */
-export function usePutOn(materials: Ref<RecentMaterialsWire | null>) {
-  const { say, busy, studio } = useTelling()
+export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling>, materials: Ref<RecentMaterialsWire | null>) {
   const materialId = ref<number | null>(null)
   const chosen = ref<number[]>([])
   const when = ref<TimeAnswer | null>({ kind: 'ago', minutes: 0 })

@@ -1,8 +1,9 @@
 import type { InjectionKey } from 'vue'
 import { FetchError } from 'ofetch'
-import { effectOn } from '#shared/effects'
+import { effectOfAct, wets } from '#shared/effects'
+import type { EffectOf } from '#shared/effects'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
-import type { FilmState, PieceState } from '#shared/schemas/piece-state'
+import type { PieceState } from '#shared/schemas/piece-state'
 import { milestoneNames } from '#shared/terms'
 import { effectText, toldWords } from '#shared/words/hands'
 import type { Effect } from '#shared/words/hands'
@@ -15,8 +16,6 @@ type Studio = Awaited<ReturnType<typeof useStudio>>
 
 /** What a page tells: the kind, what it says, when, and words for its step or material. */
 export interface Telling { kind: TellableKind, body: ActRequest['body'], pieces: readonly PieceState[], doneAt: number, partIds?: number[], step?: string | null, material?: string | null }
-
-const wets = (kind: TellableKind) => kind === 'coat on' || kind === 'glue-up on'
 
 function factOf({ kind, body, step, material }: Telling): string {
   const milestone = milestoneNames.find(name => name === body.milestone) ?? null
@@ -31,18 +30,10 @@ function makeTelling(studio: Studio) {
   const told = useToldStore()
   const current = (ids: readonly number[]) => (studio.state.value?.pieces ?? []).filter(piece => ids.includes(piece.id))
 
-  /** The films an act speaks about: those it made, or for a test those on the parts touched. */
-  const filmsFor = (line: Pick<ToldLine, 'kind' | 'rootId' | 'partIds'>) => (film: FilmState) =>
-    wets(line.kind) ? film.actId === line.rootId : film.hold === null && (!line.partIds || film.partIds.some(id => line.partIds?.includes(id)))
-
-  function effectNow(line: Pick<ToldLine, 'kind' | 'rootId' | 'partIds' | 'pieceIds' | 'body'>): Effect | null {
-    const speaks = wets(line.kind) || line.kind === 'touch test' || line.kind === 'air'
-    const rung = line.kind === 'touch test' ? milestoneNames.find(name => name === line.body.milestone) ?? null : null
-    return speaks ? effectOn(current(line.pieceIds), filmsFor(line), rung) : null
-  }
+  const effectNow = (line: EffectOf & Pick<ToldLine, 'pieceIds'>) => effectOfAct(current(line.pieceIds), line)
 
   /** What the times say now, beside what they said before; or the next moment where no time is at stake. */
-  function describe(line: Pick<ToldLine, 'kind' | 'rootId' | 'partIds' | 'pieceIds' | 'body' | 'before'>): { effect: string, now: Effect | null } {
+  function describe(line: EffectOf & Pick<ToldLine, 'pieceIds' | 'before'>): { effect: string, now: Effect | null } {
     const effect = effectNow(line)
     if (effect) return { effect: effectText(effect, line.before, studio.clock.value), now: effect }
     const next = studio.pieces.value.find(read => line.pieceIds.includes(read.piece.id))?.next

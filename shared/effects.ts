@@ -1,4 +1,6 @@
 import type { FilmState, PieceState } from '#shared/schemas/piece-state'
+import type { TellableKind } from '#shared/schemas/act'
+import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
 import { worstFilm } from '#shared/piece-strip'
 import type { Effect } from '#shared/words/hands'
@@ -22,4 +24,18 @@ export function effectOn(pieces: readonly PieceState[], pick: (film: FilmState) 
   if (!reached) return null
   const { likelyAt, p90At, reachedAt, reason } = reached
   return { milestone: reached.name === wanted ? wanted : 'dry-to-handle', likelyAt, p90At, reachedAt, reason }
+}
+
+/** An act as far as its effect on times goes; `rootId` is the number that the films it made are known by. */
+export interface EffectOf { kind: TellableKind, rootId: number | null, partIds?: number[], body: Record<string, unknown> }
+
+/** Whether an act leaves something wet. */
+export const wets = (kind: TellableKind) => kind === 'coat on' || kind === 'glue-up on'
+
+/** How the films an act speaks about stand: those it made, or for a test and a note of the air those on the parts named. Null where no time is at stake. */
+export function effectOfAct(pieces: readonly PieceState[], { kind, rootId, partIds, body }: EffectOf): Effect | null {
+  if (wets(kind)) return effectOn(pieces, film => film.actId === rootId)
+  if (kind !== 'touch test' && kind !== 'air') return null
+  const rung = kind === 'touch test' ? milestoneNames.find(name => name === body.milestone) ?? null : null
+  return effectOn(pieces, film => film.hold === null && (!partIds || film.partIds.some(id => partIds.includes(id))), rung)
 }

@@ -28,8 +28,7 @@ function doneAct(job: Job): ActChoice {
 }
 
 function tests(job: Job): { tested: ActChoice, tacky: ActChoice } | null {
-  const doubtful = job.because.code === 'doubt'
-  const milestone = job.tests ?? (doubtful ? 'dry-to-handle' : null)
+  const milestone = job.tests ?? (job.doubtful ? 'dry-to-handle' : null)
   if (milestone === null) return null
   const act = (label: string, reached: boolean): ActChoice => ({ label, kind: 'touch test', body: { milestone, reached }, perPart: true })
   return { tested: act(actKeys.tested, true), tacky: act(job.kind === 'release' ? actKeys.leaveIn : actKeys.tacky, false) }
@@ -70,7 +69,7 @@ function ranked(job: Job): { act: ActChoice, who: 'step' | 'maker' | 'anybody' }
   const began = job.kind === 'work' && job.turn.status === 'waiting' ? [{ act: { label: actKeys.began, kind: 'began' as const, body: { step: step.key } }, who: 'step' as const }] : []
   if (step.status === 'set aside') return [{ act: { label: actKeys.resume, kind: 'resumed', body: { step: step.key } }, who: 'maker' }]
   if (job.turn.status === 'doing') return [done, notYet]
-  if (job.because.code === 'doubt') return [...tested, { act: { label: actKeys.stripped, kind: 'stripped', body: {}, perPart: true }, who: 'maker' }, ...tacky, done]
+  if (job.doubtful) return [...tested, { act: { label: actKeys.stripped, kind: 'stripped', body: {}, perPart: true }, who: 'maker' }, ...tacky, done]
   if (job.kind === 'release') return [done, ...tacky, ...tested]
   if (job.kind === 'check') return [done]
   if (job.due) return [done, notYet, ...tacky, ...tested, ...began]

@@ -36,6 +36,8 @@ export interface Job {
   /** The planned start of a coat or glue-up has passed and nobody has said whether it went on. */
   due: boolean
   tests: MilestoneName | null
+  /** A film beneath is in doubt: tested or stripped before anything else. */
+  doubtful: boolean
 }
 
 /** What kind of state a turn is in: pieces in different ones are never one job. */
@@ -121,13 +123,14 @@ function jobOf(id: string, pieces: JobPiece[], clock: Clock, heardAt: number | n
   const at = !timed || starts.length === 0 ? null : Math.max(...starts)
   const urgent = pressing || due || phase.startsWith('doing') || phase === 'doubt' || phase === 'window shut'
   const moment = timed ? momentOf(pieces, now, heardAt) : null
-  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due, tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
+  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due, doubtful: phase === 'doubt', tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
 }
 
 /** When hands are wanted for one turn: once it may begin, and not before the plan wants it. */
 function planned(read: ReadTurn, now: number): number | null {
   const from = wantedFrom(read)
-  const plan = read.turn.plan?.startsAt ?? null
+  // A check and a release are wanted at their own time, whatever else is planned.
+  const plan = read.turn.kind === 'work' ? read.turn.plan?.startsAt ?? null : null
   if (from === null) return read.begin.may ? plan ?? now : null
   return Math.max(from, plan ?? from)
 }

@@ -46,5 +46,7 @@ export function groupNames(names: readonly string[]): string {
       ...sorted.length === 1 ? [`${stem} ${sorted[0]}`] : sorted.length > 1 ? [`${plural(stem)} ${listText(runsOf(sorted))}`] : [],
     ]
   })
-  return said.length > 4 ? `${said.slice(0, 3).join(', ')} and ${said.length - 3} more` : listText(said)
+  if (said.length > 4) return `${said.slice(0, 3).join(', ')} and ${said.length - 3} more`
+  // A comma keeps "5 and 6, and Ferry cover 4" apart.
+  return said.length === 2 && said[0]?.includes(' and ') ? said.join(', and ') : listText(said)
 }

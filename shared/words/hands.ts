@@ -40,7 +40,6 @@ export const handsWords = {
   failed: 'The studio cannot be reached, and nothing of it is known here yet.',
   stale: 'The studio cannot be reached. This is how it stood when last heard.',
   show: (count: number) => `Show ${count} more`,
-  openJob: 'Open',
 } as const
 
 const headings: Record<Section, string> = { now: 'Now', today: 'Later today', days: 'Next days', waiting: 'Waiting for something' }
@@ -95,13 +94,13 @@ export function jobMoment(job: Job, film: FilmState | null, clock: Clock): strin
   if (turn.step.status === 'set aside') return asSentence(turn.step.asideReason ? `set aside: ${turn.step.asideReason}` : 'set aside')
   if (turn.doing) return asSentence(`${turn.doing.by || 'somebody'} has been at it since ${clockTime(turn.doing.sinceAt, clock)}`)
   if (job.kind === 'release') return releaseText(job, film, clock)
+  if (job.kind === 'check') return turn.wantedAt === null ? asSentence(beginReason(because)) : asSentence(turn.wantedAt <= clock.now ? `wanted since ${clockTime(turn.wantedAt, clock)}` : `wanted at ${clockTime(turn.wantedAt, clock)}`)
   if (job.due && turn.plan) return asSentence(`due since ${clockTime(turn.plan.dueAt, clock)}: is it on`).replace(/\.$/, '?')
   if (moment?.kind === 'start by') {
     const why = momentReason(moment, clock)
     return asSentence(why ? `${momentText(moment, clock)}; ${why}` : momentText(moment, clock))
   }
   if (job.may) return asSentence(plannedText(job, clock) ?? 'may begin')
-  if (moment?.kind === 'check') return asSentence(momentText(moment, clock))
   if (moment && !job.may && because.code !== 'role') return asSentence(`${momentText(moment, clock)}; ${beginReason(because)}`)
   return asSentence(beginReason(because))
 }

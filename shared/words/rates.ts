@@ -14,9 +14,10 @@ export function rateText(rate: RateWire, units: 'metric' | 'us' = 'metric'): str
   const air = rate.assumed ? ' (nobody has read the air here: the studio’s usual is taken)' : ''
   const head = `${rate.material}, towards ${milestoneText(rate.towards)}`
   if (rate.factor <= 0.005) return `${head}: stands still at ${warmth(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
+  const pulls = (part: number) => counts(part) && Math.sign(Math.log(part)) === Math.sign(Math.log(rate.factor))
   const causes = [
-    ...counts(rate.warmth) && (rate.warmth < 1) === (rate.factor < 1) ? [warmth(rate.tempC, units)] : [],
-    ...counts(rate.damp) && (rate.damp < 1) === (rate.factor < 1) ? [percent(rate.rh)] : [],
+    ...pulls(rate.warmth) ? [warmth(rate.tempC, units)] : [],
+    ...pulls(rate.damp) ? [percent(rate.rh)] : [],
   ]
   if (!counts(rate.factor) || causes.length === 0) return `${head}: as fast as its sheet says, at ${warmth(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
   return `${head}: ${rate.factor.toFixed(2)} of sheet speed: ${causes.join(', ')}${air}.`

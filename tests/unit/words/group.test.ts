@@ -23,6 +23,7 @@ describe('names of a group', () => {
   it('keeps names without numbers, and says how many more of very many', () => {
     expect(groupNames(['Clock case', 'Mirror frame'])).toBe('Clock case and Mirror frame')
     expect(groupNames(['Clock case', ...ledgers(1, 2)])).toBe('Clock case and Ledgers 1 and 2')
+    expect(groupNames([...ledgers(1, 2), 'Clock case'])).toBe('Ledgers 1 and 2, and Clock case')
     expect(groupNames(['Ash', 'Birch', 'Cedar', 'Deal', 'Elm'])).toBe('Ash, Birch, Cedar and 2 more')
     expect(groupNames(['Lot 007', 'Lot 008'])).toBe('Lot 007 and Lot 008')
     expect([groupNames([]), listText(['a', 'b', 'c'])]).toEqual(['', 'a, b and c'])

@@ -1,0 +1,244 @@
+import Database from 'better-sqlite3'
+import type { Browser, Locator, Page } from 'playwright-core'
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
+import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
+import { startServer } from '../helpers/server'
+import type { TestServer } from '../helpers/server'
+import { firstStudio, joinAs } from '../helpers/sign-in'
+import type { Visitor } from '../helpers/sign-in'
+
+const minute = 60_000
+let server: TestServer
+let browser: Browser
+let maker: Visitor
+let helper: Visitor
+let shelfId: number
+let keys = 0
+
+interface StateWire { pieces: { id: number, name: string, version: number, groups: { films: { actId: number, endedAt: string, material: string | null, milestones: { name: string, likelyAt: string | null, p90At: string | null }[] }[] }[] }[] }
+
+const made = async (who: Visitor, path: string, body: unknown) => {
+  const answer = await who.post<{ id: number, actId: number, pieceIds: number[] }>(path, body)
+  if (answer.status !== 200) throw new Error(`${path} was answered with ${answer.status}: ${JSON.stringify(answer.body)}`)
+  return answer.body
+}
+const piecesOf = async (prefix: string) => (await maker.get<StateWire>('/api/state')).body.pieces.filter(piece => piece.name.startsWith(prefix))
+const filmsOf = (pieces: StateWire['pieces']) => pieces.flatMap(piece => piece.groups.flatMap(group => group.films))
+
+/** Starts a batch of so many pieces that wait for their first paint. */
+async function startBatch(name: string, count: number, scheduled = true) {
+  const file = new Database(server.databaseFile, { readonly: true })
+  const schedule = file.prepare('select id from finishing_schedule where library_key = ?').get('painted-waxed-box') as { id: number }
+  file.close()
+  const startsAt = new Date(Date.now() - 6 * 60 * minute).toISOString()
+  await made(maker, '/api/batches', { clientKey: `batch-of-test-${++keys}`, name: `${name} batch`, scheduleId: scheduled ? schedule.id : null, pieces: Array.from({ length: count }, (_, i) => `${name} ${i + 1}`), placeId: shelfId, order: null, startsAt })
+}
+
+const jobOf = (page: Page, step: string, names: string) => page.getByRole('article').filter({ has: page.getByRole('heading', { name: `${step} ${names}` }) })
+const told = (page: Page) => page.getByRole('region', { name: 'Told' })
+
+/** A thumb that counts its taps. */
+function thumb() {
+  let taps = 0
+  return {
+    tap: async (key: Locator) => {
+      await key.click()
+      taps++
+    },
+    taps: () => taps,
+  }
+}
+
+beforeAll(async () => {
+  server = await startServer()
+  const owner = await firstStudio(server.origin)
+  maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
+  helper = await joinAs(server.origin, owner, 'helper', 'hazel@example.test')
+  const room = await made(owner, '/api/rooms', { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
+  shelfId = (await made(owner, '/api/places', { roomId: room.id, name: 'Shelf A', kind: 'shelf', capacity: 60, sort: 0 })).id
+  browser = await openBrowser()
+})
+afterAll(async () => {
+  await browser.close()
+  await server.stop()
+})
+
+/** Each test begins with an empty studio: what the last one left has gone out. */
+afterEach(async () => {
+  const pieces = (await piecesOf('')).map(({ id, version }) => ({ id, version }))
+  if (pieces.length > 0) await made(maker, '/api/acts', { clientKey: `gone-${++keys}-of-test`, kind: 'gone', doneAt: new Date().toISOString(), pieces, body: {} })
+})
+
+describe('a maker\'s thumb on a phone', () => {
+  it('says that a coat is on a whole group, twenty minutes ago, in two taps; moves it and takes it back', async () => {
+    await startBatch('Tide box', 4)
+    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    const job = jobOf(page, 'First paint on the lid top', 'Tide boxes 1–4')
+    const { tap, taps } = thumb()
+    await tap(job.getByLabel('20 min ago'))
+    await tap(job.getByRole('button', { name: 'Coat is on' }))
+    expect(taps()).toBe(2)
+    await told(page).getByText(/^Coat on: first paint on the lid top\. Tide boxes 1–4, /).waitFor()
+    await told(page).getByText(/likely .+, give it till /i).waitFor()
+    const films = filmsOf(await piecesOf('Tide box'))
+    expect(films).toHaveLength(4)
+    // The last of the row ended twenty minutes before the tap, give or take the test's own minute.
+    expect(Math.abs(Math.max(...films.map(film => Date.parse(film.endedAt))) - (Date.now() - 20 * minute))).toBeLessThan(minute)
+
+    await told(page).getByRole('button', { name: 'Another time' }).click()
+    await told(page).getByLabel('60 min ago').click()
+    await told(page).getByRole('button', { name: 'Move it' }).click()
+    await told(page).getByText(/It was likely/).waitFor()
+    expect(Math.abs(Math.max(...filmsOf(await piecesOf('Tide box')).map(film => Date.parse(film.endedAt))) - (Date.now() - 60 * minute))).toBeLessThan(minute)
+
+    await told(page).getByRole('button', { name: 'Undo' }).click()
+    await told(page).getByText('Taken back: coat on: first paint on the lid top.').waitFor()
+    expect(filmsOf(await piecesOf('Tide box'))).toEqual([])
+    await job.getByRole('button', { name: 'Coat is on' }).waitFor()
+    expect(problems).toEqual([])
+  })
+
+  it('says it of four of six in four taps', async () => {
+    await startBatch('Ledger', 6)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    const job = jobOf(page, 'First paint on the lid top', 'Ledgers 1–6')
+    const { tap, taps } = thumb()
+    await tap(job.getByRole('button', { name: 'All 6' }))
+    await tap(job.getByLabel('Ledger 2'))
+    await tap(job.getByLabel('Ledger 5'))
+    await tap(job.getByRole('button', { name: 'Coat is on' }))
+    expect(taps()).toBe(4)
+    await told(page).getByText(/Ledgers 1, 3, 4 and 6/).waitFor()
+    const coated = (await piecesOf('Ledger')).filter(piece => filmsOf([piece]).length > 0)
+    expect(coated.map(piece => piece.name)).toEqual(['Ledger 1', 'Ledger 3', 'Ledger 4', 'Ledger 6'])
+  })
+
+  it('says that a coat is still tacky in two taps, and the time moves', async () => {
+    await startBatch('Frame', 1)
+    const [piece] = await piecesOf('Frame')
+    if (!piece) throw new Error('The batch has no piece.')
+    const { actId } = await made(maker, '/api/acts', { clientKey: 'coat-of-frame-1', kind: 'coat on', doneAt: new Date(Date.now() - 60 * minute).toISOString(), pieces: [{ id: piece.id, version: piece.version }], body: { step: 'lid-1' } })
+    const rung = async () => filmsOf(await piecesOf('Frame'))[0]?.milestones.find(each => each.name === 'dry-to-sand-lightly')
+    const p90 = Date.parse((await rung())?.p90At ?? '')
+    // Moved back in time until it should have been ready ten minutes ago: then a thumb that says no moves it.
+    await made(maker, `/api/acts/${actId}/correct`, { clientKey: 'correct-frame-1', doneAt: new Date(Date.now() - 60 * minute - (p90 - Date.now()) - 10 * minute).toISOString() })
+    const before = Date.parse((await rung())?.p90At ?? '')
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    const job = jobOf(page, 'Turn the lid over onto points', 'Frame 1: lid')
+    const { tap, taps } = thumb()
+    if (!await job.getByRole('button', { name: 'Still tacky' }).isVisible()) await tap(job.getByRole('heading').getByRole('button'))
+    await tap(job.getByRole('button', { name: 'Still tacky' }))
+    expect(taps()).toBeLessThanOrEqual(2)
+    await told(page).getByText('Tested: not yet dry to sand lightly.').waitFor()
+    await told(page).getByText(/It was likely/).waitFor()
+    expect(Date.parse((await rung())?.p90At ?? '')).toBeGreaterThan(before)
+  })
+
+  it('puts something on three pieces in five taps, without a schedule', async () => {
+    await startBatch('Sample', 5, false)
+    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/put-on')
+    const { tap, taps } = thumb()
+    await tap(page.getByLabel('Acrylic varnish', { exact: true }))
+    for (const no of [1, 2, 4]) await tap(page.getByRole('button', { name: `Sample ${no}`, exact: true }))
+    await tap(page.getByRole('button', { name: 'Acrylic varnish is on 3' }))
+    expect(taps()).toBe(5)
+    await told(page).getByText(/^Coat on: acrylic varnish\. Samples 1, 2 and 4, /).waitFor()
+    const coated = (await piecesOf('Sample')).filter(piece => filmsOf([piece]).some(film => film.material === 'Acrylic varnish'))
+    expect(coated.map(piece => piece.name)).toEqual(['Sample 1', 'Sample 2', 'Sample 4'])
+    expect(problems).toEqual([])
+  })
+
+  it('is offered the step that waits for exactly this material', async () => {
+    await startBatch('Casket', 2)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/put-on')
+    await page.getByLabel('Something else').selectOption({ label: 'Chalk-type paint' }).catch(() => page.getByLabel('Chalk-type paint').check())
+    await page.getByRole('button', { name: 'Casket 1', exact: true }).click()
+    await page.getByText('Casket 1 waits for exactly this: first paint on the lid top.').waitFor()
+    await page.getByRole('button', { name: 'On, as first paint on the lid top' }).click()
+    await told(page).getByText(/^Coat on: first paint on the lid top\. Casket 1, /).waitFor()
+  })
+})
+
+describe('the hands screen', () => {
+  it('shows what stands now when somebody else was first, and says it again', async () => {
+    await startBatch('Crate', 1)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    // The page does not hear of it: the live word and the state are held back until the tap.
+    await page.route('**/api/live', route => route.abort())
+    await visit(page, '/hands')
+    const job = jobOf(page, 'First paint on the lid top', 'Crate 1: lid')
+    await job.waitFor()
+    const [piece] = await piecesOf('Crate')
+    await made(helper, '/api/acts', { clientKey: 'seen-crate-1', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece?.id, version: piece?.version }], body: {} })
+    await job.getByRole('button', { name: 'Coat is on' }).click()
+    await told(page).getByText('Somebody else was at this piece a moment ago.').waitFor()
+    await told(page).getByRole('button', { name: 'Say it again' }).click()
+    await told(page).getByText(/likely .+, give it till /i).waitFor()
+  })
+
+  it('keeps a tap that does not get through, marks it, and tells it later', async () => {
+    await startBatch('Trough', 1)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    await page.route('**/api/acts', route => route.abort())
+    await jobOf(page, 'First paint on the lid top', 'Trough 1: lid').getByRole('button', { name: 'Coat is on' }).click()
+    await told(page).getByText('It is kept on this device').waitFor()
+    await page.getByText('One tap is not told yet.').waitFor()
+    await page.unroute('**/api/acts')
+    await page.getByRole('button', { name: 'Tell them now' }).click()
+    await page.getByText('One tap is not told yet.').waitFor({ state: 'detached' })
+    expect(filmsOf(await piecesOf('Trough'))).toHaveLength(1)
+  })
+
+  it('is worked by the keyboard alone', async () => {
+    await startBatch('Panel', 1)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    const tabTo = async (target: Locator) => {
+      for (let presses = 0; presses < 150; presses++) {
+        if (await target.evaluate(element => element === document.activeElement)) return
+        await page.keyboard.press('Tab')
+      }
+      throw new Error('The key was not reached by Tab.')
+    }
+    const job = jobOf(page, 'First paint on the lid top', 'Panel 1: lid')
+    const header = job.getByRole('heading').getByRole('button')
+    await tabTo(header)
+    await page.keyboard.press('Enter')
+    expect(await header.getAttribute('aria-expanded')).toBe('false')
+    await page.keyboard.press('Enter')
+    await tabTo(job.getByLabel('now', { exact: true }))
+    await page.keyboard.press('ArrowRight')
+    expect(await job.getByLabel('10 min ago').isChecked()).toBe(true)
+    await tabTo(job.getByRole('button', { name: 'Coat is on' }))
+    await page.keyboard.press('Enter')
+    await told(page).getByText(/^Coat on: first paint on the lid top\. Panel 1, /).waitFor()
+    await tabTo(told(page).getByRole('button', { name: 'Undo' }))
+    await page.keyboard.press('Enter')
+    await told(page).getByText(/^Taken back/).waitFor()
+  })
+
+  it('gives a helper only the keys a helper has', async () => {
+    await startBatch('Chest', 2)
+    const { page } = await openPage(browser, server.origin, {}, helper)
+    await visit(page, '/hands')
+    await page.getByRole('heading', { name: 'For others' }).waitFor()
+    expect(await page.getByRole('button', { name: 'Coat is on' }).count()).toBe(0)
+  })
+
+  it.each(['light', 'dark'] as const)('has nothing that axe objects to in the %s scheme', async (colorScheme) => {
+    await startBatch('Trunk', 3)
+    const { page } = await openPage(browser, server.origin, { colorScheme }, maker)
+    await visit(page, '/hands')
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByRole('button', { name: /^More about/ }).first().click()
+    expect(await axeProblems(page)).toEqual([])
+    await visit(page, '/put-on')
+    expect(await axeProblems(page)).toEqual([])
+  })
+})
