@@ -1,4 +1,5 @@
 import { roomStates } from '~~/server/services/room-states'
+import { listReadings } from '~~/server/services/readings'
 import type { Database } from '~~/server/utils/database'
 import { equilibriumMoisture } from '#shared/air/equilibrium'
 import { dewPoint } from '#shared/air/psychrometrics'
@@ -10,6 +11,7 @@ import type { RoomAirState } from '#shared/schemas/air'
 const sheetAir = { tempC: 20, rh: 0.5 }
 /** Below this the published equation for wood does not speak. */
 const coldestBoard = -5
+const notesShown = 8
 
 /** Every room's air at `now` (ms UTC), with what it means for films and for board. */
 export function airNow(db: Database, studioId: number, now: number): RoomAirState[] {
@@ -21,6 +23,7 @@ export function airNow(db: Database, studioId: number, now: number): RoomAirStat
       dewPointC: rh > 0 ? dewPoint(tempC, rh) : null,
       boardMoisture: tempC >= coldestBoard ? equilibriumMoisture(tempC, rh) : null,
       speeds: filmDrivers.map(driver => ({ driver, factor: driverRate(driver, { tempC, rh }, sheetAir) })),
+      notes: listReadings(db, studioId, id, notesShown).map(({ doubt: _doubt, ...note }) => note),
     }]
   })
 }

@@ -64,5 +64,5 @@ export function removeReading(db: Database, studioId: number, member: Membership
 export function listReadings(db: Database, studioId: number, roomId: number, count: number) {
   const names = memberNames(db, studioId)
   return db.select().from(reading).where(scoped(reading, studioId, eq(reading.roomId, roomId))).orderBy(desc(reading.at)).limit(count).all()
-    .map(row => ({ id: row.id, at: row.at, tempC: row.tempC, rh: row.rh, source: row.source, doubt: row.doubt, by: names.get(row.memberId ?? 0) ?? null }))
+    .map(row => ({ id: row.id, at: row.at, tempC: row.tempC, rh: row.rh, source: row.source, doubt: row.doubt, memberId: row.memberId, by: names.get(row.memberId ?? 0) ?? null }))
 }

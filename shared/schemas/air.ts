@@ -1,8 +1,11 @@
-import type { Driver } from '#shared/terms'
+import type { Driver, ReadingSource } from '#shared/terms'
 
 /** Kinds of film by what they dry by, each against a sheet that speaks of 20 °C and 50 % humidity. */
 export const filmDrivers = ['water', 'joint', 'solvent', 'oxidation', 'reaction', 'moisture'] as const satisfies readonly Driver[]
 export type FilmDriver = typeof filmDrivers[number]
+
+/** One note of the air. `tempC` null without a thermometer; `memberId` null when nobody of the studio told it. */
+export interface NoteState { id: number, at: number, tempC: number | null, rh: number, source: ReadingSource, memberId: number | null, by: string | null }
 
 /**
  * A room's air now. Degrees Celsius and a share 0..1. `assumed` when no reading speaks: the studio's usual climate is taken.
@@ -21,4 +24,6 @@ export interface RoomAirState {
   boardMoisture: number | null
   /** Drying speed by kind of film: 0.41 takes 1/0.41 as long as the sheet says. */
   speeds: { driver: FilmDriver, factor: number }[]
+  /** The newest first. */
+  notes: NoteState[]
 }

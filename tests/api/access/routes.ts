@@ -59,6 +59,10 @@ export const routes: Record<string, RouteCase> = {
   'rooms/[id].delete.ts': { least: 'maker', apart: 'row', at: 'room' },
   // Nothing is shut in the first studio's room: who may is told so with a conflict.
   'rooms/[id]/open.post.ts': { least: 'maker', apart: 'row', at: 'room', body: () => ({}) },
+  'materials/index.get.ts': { least: 'helper', apart: 'view' },
+  'materials/[id].get.ts': { least: 'helper', apart: 'row', at: 'material' },
+  'week.get.ts': { least: 'helper', apart: 'view' },
+  'air.get.ts': { least: 'helper', apart: 'view' },
   'materials/recent.get.ts': { least: 'helper', apart: 'view' },
   'rates/index.get.ts': { least: 'helper', apart: 'view' },
   'places/index.post.ts': { least: 'maker', apart: 'named', body: place },

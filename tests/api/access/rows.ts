@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, subscription: number, invitationToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, subscription: number, material: number, invitationToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -61,9 +61,11 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const subscription = await made(owner, '/api/push/subscriptions', pushSubscription(marker))
   const [schedule] = (await owner.get<{ id: number }[]>('/api/schedules')).body
   if (!schedule) throw new Error('The first studio has no finishing schedule.')
+  const [material] = (await owner.get<{ id: number }[]>('/api/materials')).body
+  if (!material) throw new Error('The first studio has no material.')
   const calls = writeCalls(databaseFile, room.id, seen.body.actId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, subscription: subscription.id, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, subscription: subscription.id, material: material.id, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */

@@ -1,0 +1,79 @@
+import type { FilmDriver, RoomAirState } from '#shared/schemas/air'
+import type { ReadingSource } from '#shared/terms'
+import { ago, span } from '#shared/time'
+import { humidityText, temperatureText } from '#shared/units'
+import type { Units } from '#shared/units'
+
+/** What the page of the air says. */
+export const airWords = {
+  title: 'Air',
+  waiting: 'Fetching the air of the rooms',
+  failed: 'The air of the rooms could not be fetched.',
+  noRooms: 'There are no rooms yet',
+  noRoomsSays: 'Add a room in Settings, then note its air here.',
+  toRooms: 'Add rooms',
+  note: 'Note the air',
+  inRoom: 'In which room',
+  humidity: 'Humidity',
+  temperature: 'Temperature',
+  byMeter: 'By the meter',
+  orWords: 'Or without a meter',
+  words: { dry: 'dry', normal: 'normal', damp: 'damp', wet: 'wet' },
+  noteAct: 'Note it',
+  sameAct: 'Same as before',
+  sameHint: 'For a look without a figure. It counts with more doubt.',
+  noLast: 'Nobody has noted the air here yet.',
+  when: 'When was that',
+  noted: (room: string) => `Noted in ${room}.`,
+  nextRoom: (room: string) => `${room} was read longest ago: it is next.`,
+  nothingMoves: 'No film moves.',
+  now: 'Now',
+  dewPoint: 'Dew point',
+  board: 'Board and wood settle at',
+  boardValue: (percent: number) => `${percent.toFixed(1)} % moisture`,
+  boardCold: 'too cold to say',
+  outdoor: 'outdoors',
+  unheated: 'not heated',
+  speeds: 'How fast films dry now',
+  speedsHint: 'Against a sheet that speaks of 20 °C and 50 % humidity; each film goes by its own sheet on the board.',
+  list: 'Last notes',
+  listEmpty: 'Nobody has noted the air here yet.',
+  undo: 'Take it back',
+  undoDone: 'Taken back.',
+  bySensor: 'a sensor',
+} as const
+
+const filmNames: Record<FilmDriver, string> = {
+  water: 'Water-based films', joint: 'Water-based glue in a joint', solvent: 'Solvent films', oxidation: 'Drying oils', reaction: 'Films with a hardener', moisture: 'Glue that cures with moisture',
+}
+export const filmName = (driver: FilmDriver) => filmNames[driver]
+
+/** "0.78 of sheet speed", "as fast as the sheet", "stands still". */
+export function speedText(factor: number): string {
+  if (factor <= 0.005) return 'stands still'
+  if (factor > 0.95 && factor < 1.05) return 'as fast as the sheet says'
+  return factor < 1 ? `${factor.toFixed(2)} of sheet speed` : `${factor.toFixed(1)} times sheet speed`
+}
+
+/** "19.4 °C, 61 %"; a reading without a thermometer gives the humidity alone. */
+export function airText(air: { tempC: number | null, rh: number }, units: Units): string {
+  return air.tempC === null ? humidityText(air.rh) : `${temperatureText(air.tempC, units)}, ${humidityText(air.rh)}`
+}
+
+/** How well the figures are known: "read 12 min ago", "reckoned on from a note 2 h ago", "nobody has noted it". */
+export function airAge({ readAt, assumed }: Pick<RoomAirState, 'readAt' | 'assumed'>, now: number): string {
+  if (readAt === null) return 'Assumed: nobody has noted it, so the studio’s usual climate stands in.'
+  const age = ago(readAt, now)
+  if (assumed) return `Partly assumed: last noted ${age}.`
+  return now - readAt < 30 * 60_000 ? `Noted ${age}.` : `Reckoned on from a note ${age}.`
+}
+
+const sources: Record<ReadingSource, string> = { note: 'by the meter', words: 'without a meter', same: 'same as before', file: 'from a file', sensor: 'sensor', weather: 'weather' }
+export const sourceText = (source: ReadingSource) => sources[source]
+
+/** What a reading did: "3 films move: the latest by 40 min later." `mostMs` is the shift that is largest, later above 0. */
+export function movedText(count: number, mostMs: number): string {
+  if (count === 0) return airWords.nothingMoves
+  const by = `${span(Math.abs(mostMs) / 60_000)} ${mostMs > 0 ? 'later' : 'sooner'}`
+  return count === 1 ? `One film moves: by ${by}.` : `${count} films move: the most by ${by}.`
+}

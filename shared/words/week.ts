@@ -1,0 +1,130 @@
+import { isFull } from '#shared/fullest'
+import type { Fullest } from '#shared/fullest'
+import type { BatchLoad, Evidence, Load, WeekDay } from '#shared/schemas/week'
+import type { PlaceKind } from '#shared/terms'
+import { ago, clockTime, roughTime, span } from '#shared/time'
+import type { Clock } from '#shared/time'
+
+/** What the page of the week says. */
+export const weekWords = {
+  title: 'Week',
+  waiting: 'Fetching the week',
+  failed: 'The week could not be fetched.',
+  load: 'Load against what there is',
+  resource: 'What',
+  people: 'People',
+  today: 'today',
+  places: 'Places',
+  perDay: 'Places: the fullest moment of the day. People: hours still planned against hours still there.',
+  batches: 'Batches against their dates',
+  noBatches: 'No batch is under way.',
+  noBatchesSays: 'Start a batch, and its planned end shows here against its date.',
+  start: 'Start a batch',
+  key: 'The bar runs to the planned end; where it fades, what is drying now may still make it later. The flag is the date.',
+  flag: 'date',
+  batch: 'Batch',
+  planned: 'Planned end',
+  due: 'Date',
+  standing: 'How it stands',
+  noDate: 'no date given',
+  clashes: 'What finds no time',
+  noClashes: 'Everything that can be planned has a time.',
+  rests: 'What this rests on',
+  noPlan: 'There is no plan yet: nothing waits for hands.',
+  pieces: (count: number) => count === 1 ? '1 piece' : `${count} pieces`,
+} as const
+
+const placeNames: Record<PlaceKind, string> = {
+  'shelf': 'Shelves', 'rail': 'Rails', 'hook': 'Hooks', 'turntable': 'Turntables', 'rack': 'Racks', 'clamps': 'Clamps', 'press': 'Press', 'bench': 'Benches', 'booth': 'Booth', 'drying cabinet': 'Drying cabinet', 'floor': 'Floor',
+}
+export const placeKindsText = (kind: PlaceKind) => placeNames[kind]
+const single: ReadonlySet<string> = new Set(['Press', 'Booth', 'Drying cabinet', 'Floor'])
+
+const longDays = ['Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday', 'Sunday'] as const
+export const weekdayText = (weekday: number) => longDays[weekday - 1] ?? ''
+
+/** "closed", "closed: fair", null on a working day. */
+export const closedText = ({ closed }: WeekDay) => closed === null ? null : closed === '' ? 'closed' : `closed: ${closed}`
+
+const hoursText = (minutes: number) => `${Number((minutes / 60).toFixed(minutes < 600 ? 1 : 0))} h`
+
+/** Inside a person's tray: "3.5 h of 8 h", "closed", "away", "off", "nothing planned". */
+export function personText(load: Load, day: WeekDay): string {
+  if (load.of === 0 && load.used === 0) return day.closed !== null ? 'closed' : load.away ? 'away' : day.today ? 'over' : 'off'
+  if (load.of === 0) return `${hoursText(load.used)}, out of hours`
+  return load.used === 0 ? `free, ${hoursText(load.of)}` : `${hoursText(load.used)} of ${hoursText(load.of)}`
+}
+
+/** Inside a place's tray: "5 of 8", "8 of 8, full", "9 of 8, 1 too many", "free". */
+export function placeText({ used, of }: Load): string {
+  if (used === 0) return 'free'
+  if (used > of) return `${used} of ${of}, ${used - of} too many`
+  return used === of ? `${used} of ${of}, full` : `${used} of ${of}`
+}
+
+/** "today, Wednesday and Thursday". */
+function daysText(days: readonly WeekDay[], fromAll: number): string {
+  if (days.length === fromAll) return 'on every day shown'
+  const names = days.map(day => day.today ? 'today' : weekdayText(day.weekday))
+  const on = names.length === 1 ? names[0] ?? '' : `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
+  return days[0]?.today ? on : `on ${on}`
+}
+
+/** The sentence at the top: what is full and when, or what comes nearest. It says what is, never what would change it. */
+export function fullestSentence(found: Fullest | null, days: readonly WeekDay[], people: string): { head: string, rest: string } {
+  if (!found) return { head: 'Nothing is taken up this week.', rest: '' }
+  const when = daysText(found.days.flatMap(index => days[index] ?? []), days.length)
+  const amount = found.name === people ? `${hoursText(found.used)} of ${hoursText(found.of)}` : `${found.used} of ${found.of}`
+  const is = single.has(found.name) ? 'is' : 'are'
+  if (found.share > 1) return { head: `${found.name} ${is} over full ${when}.`, rest: `At the worst ${amount}: something must stand elsewhere.` }
+  if (isFull(found)) return { head: `${found.name} ${is} full ${when}.`, rest: found.share < 1 ? `At the most ${amount}.` : `That is ${amount}.` }
+  return { head: 'Nothing is full this week.', rest: `${found.name} ${single.has(found.name) ? 'comes' : 'come'} nearest ${when}: ${amount}.` }
+}
+
+/** A lateness no finer than anybody plans by: hours under a day, then half days. */
+function lateText(ms: number): string {
+  const hours = ms / 3_600_000
+  if (hours < 1) return span(Math.max(1, Math.round(ms / 60_000)))
+  if (hours < 24) return `${Math.round(hours)} h`
+  const days = Math.round(hours / 12) / 2
+  return days === 1 ? '1 day' : `${days} days`
+}
+
+export type Standing = 'late' | 'near' | 'in time' | 'no date' | 'no time' | 'done'
+
+/** How a batch stands against its date. */
+export function standingOf({ dueAt, endsAt, latestAt, without, left }: BatchLoad): Standing {
+  if (left === 0) return 'done'
+  if (without > 0 || endsAt === null) return 'no time'
+  if (dueAt === null) return 'no date'
+  if (endsAt > dueAt) return 'late'
+  return latestAt !== null && latestAt > dueAt ? 'near' : 'in time'
+}
+
+/** "1.5 days late", "in time", "in time if nothing dries slower than planned". */
+export function standingText(batch: BatchLoad): string {
+  switch (standingOf(batch)) {
+    case 'late': return `${lateText((batch.endsAt ?? 0) - (batch.dueAt ?? 0))} late`
+    case 'near': return 'in time, if nothing dries slower'
+    case 'in time': return 'in time'
+    case 'no date': return 'no date given'
+    case 'no time': return `${batch.without} of ${batch.left} steps without a time`
+    case 'done': return 'nothing left for hands'
+  }
+}
+
+export const endText = (batch: BatchLoad, clock: Clock) => batch.endsAt === null ? '' : roughTime(batch.endsAt, clock, 'up')
+export const dueText = (batch: BatchLoad, clock: Clock) => batch.dueAt === null ? weekWords.noDate : clockTime(batch.dueAt, clock)
+
+const listed = (names: readonly string[]) => names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
+
+/** What the page rests on and how old that is, one sentence each. */
+export function evidenceSentences({ standing, oldestSeenAt, missing, unread, oldestReadAt }: Evidence, planMadeAt: number | null, now: number): string[] {
+  return [
+    planMadeAt === null ? weekWords.noPlan : `The plan was made ${ago(planMadeAt, now)}.`,
+    ...standing === 0 || oldestSeenAt === null ? [] : [`${standing === 1 ? 'One piece stands' : `${standing} pieces stand`} in the studio; the one not looked at for longest was seen ${ago(oldestSeenAt, now)}.`],
+    ...missing === 0 ? [] : [missing === 1 ? 'One piece is not where it should be.' : `${missing} pieces are not where they should be.`],
+    ...oldestReadAt === null ? [] : [`The air noted longest ago was noted ${ago(oldestReadAt, now)}.`],
+    ...unread.length === 0 ? [] : [`Nobody has noted the air in ${listed(unread)}.`],
+  ]
+}
