@@ -91,8 +91,7 @@ class UsualTimes {
 type Head = Pick<ScheduleWire, 'id' | 'libraryKey' | 'name' | 'summary' | 'no'>
 
 function wireOf(head: Head, edition: ScheduleEdition, materials: Materials, times: UsualTimes): ScheduleDetailWire {
-  const partNames = new Map(edition.parts.map(part => [part.key, part.name]))
-  const steps = edition.steps.map(step => stepWire(step, partNames, materials, times))
+  const steps = edition.steps.map(step => stepWire(step, edition, materials, times))
   const links = edition.links.map(link => linkWire(link, edition, times))
   const used = edition.steps.flatMap(step => (step.materialId === null ? [] : materials.get(step.materialId) ?? []))
   return {
@@ -102,19 +101,28 @@ function wireOf(head: Head, edition: ScheduleEdition, materials: Materials, time
   }
 }
 
-function stepWire(step: StepRow, partNames: ReadonlyMap<string, string>, materials: Materials, times: UsualTimes): ScheduleStepWire {
+function stepWire(step: StepRow, edition: ScheduleEdition, materials: Materials, times: UsualTimes): ScheduleStepWire {
   const { key, name, kind, hold, dust, perDay, days, untilEnough, setupMin, pieceMin, cleanMin, releaseMin, hands } = step
   const its = step.materialId === null ? undefined : materials.get(step.materialId)
   const film = kind === 'coat' || kind === 'glue-up'
+  const on = targetsOf(step, edition)
   return {
     key, name, kind, hold, dust, perDay, days, untilEnough, setupMin, pieceMin, cleanMin, releaseMin, hands,
     material: its ? { id: its.id, name: its.name } : null,
-    parts: [...new Set(step.targets.map(target => partNames.get(target.partKey) ?? ''))],
+    parts: on.map(each => each.part), on,
     checks: step.checks.map(check => ({ name: check.name, afterMin: check.afterMin, minutes: check.minutes })),
     again: film && perDay * days > 1 ? times.wait(step, 'ready-to-recoat', 'p90') : null,
     held: film && hold !== null ? times.wait(step, 'out-of-clamps', 'p90') : null,
     dry: film && hold === null ? times.wait(step, 'dry-to-handle', 'p90') : null,
   }
+}
+
+/** What a step works on by name, in the order of the parts. */
+function targetsOf(step: StepRow, edition: ScheduleEdition): ScheduleStepWire['on'] {
+  return edition.parts.flatMap((part) => {
+    const own = step.targets.filter(target => target.partKey === part.key)
+    return own.length === 0 ? [] : [{ part: part.name, faces: part.faces.filter(face => own.some(target => target.faceKey === face.key)).map(face => face.name) }]
+  })
 }
 
 function linkWire(link: ScheduleEdition['links'][number], edition: ScheduleEdition, times: UsualTimes): ScheduleLinkWire {

@@ -15,6 +15,8 @@ export interface ScheduleStepWire {
   dust: DustClass
   /** Names of the parts it works on. */
   parts: string[]
+  /** The same with the faces; none listed: the whole part. */
+  on: { part: string, faces: string[] }[]
   perDay: number
   days: number
   untilEnough: boolean

@@ -37,7 +37,6 @@ export const airWords = {
   speeds: 'How fast films dry now',
   speedsHint: 'Against a sheet that speaks of 20 °C and 50 % humidity; each film goes by its own sheet on the board.',
   list: 'Last notes',
-  listEmpty: 'Nobody has noted the air here yet.',
   undo: 'Take it back',
   undoDone: 'Taken back.',
   bySensor: 'a sensor',

@@ -3,7 +3,7 @@ import { inGraphOrder, walkSchedule } from '#shared/schedule-walk'
 import type { ScheduleLinkWire, ScheduleStepWire } from '#shared/schemas/schedule'
 
 const step = (key: string, over: Partial<ScheduleStepWire> = {}): ScheduleStepWire => ({
-  key, name: key, kind: 'coat', material: null, hold: null, dust: 'none', parts: [], perDay: 1, days: 1, untilEnough: false, setupMin: 5, pieceMin: 10, cleanMin: 5, releaseMin: 0, hands: 1, checks: [], again: null, held: null, dry: null, ...over,
+  key, name: key, kind: 'coat', material: null, hold: null, dust: 'none', parts: [], on: [], perDay: 1, days: 1, untilEnough: false, setupMin: 5, pieceMin: 10, cleanMin: 5, releaseMin: 0, hands: 1, checks: [], again: null, held: null, dry: null, ...over,
 })
 const wait = (likelyMin: number | null, giveTillMin = likelyMin) => ({ likelyMin, giveTillMin, promised: true })
 const link = (from: string, to: string, over: Partial<ScheduleLinkWire> = {}): ScheduleLinkWire => ({ from, to, milestone: 'ready-to-recoat', risk: 'p90', windowed: false, wait: wait(60, 90), windows: [], ...over })

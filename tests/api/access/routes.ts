@@ -42,6 +42,8 @@ export const routes: Record<string, RouteCase> = {
   'members/index.get.ts': { least: 'helper', apart: 'view' },
   'members/[id].patch.ts': { least: 'owner', apart: 'row', at: 'member', body: () => ({ stepKinds: ['coat'] }) },
   'members/[id].delete.ts': { least: 'owner', apart: 'row', at: 'member' },
+  // One's own membership is all it can end.
+  'members/leave.post.ts': { least: 'signed in', apart: 'none' },
   'invitations/index.get.ts': { least: 'owner', apart: 'view' },
   'invitations/index.post.ts': { least: 'owner', apart: 'view', body: () => ({ role: 'helper' }) },
   'invitations/[id].delete.ts': { least: 'owner', apart: 'row', at: 'invitation' },

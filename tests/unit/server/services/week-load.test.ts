@@ -7,7 +7,6 @@ import { peak } from '~~/server/services/week-places'
 import type { Use } from '~~/server/services/week-places'
 import { fullest } from '#shared/fullest'
 import { fullestSentence, placeKindsText, standingOf, standingText } from '#shared/words/week'
-import type { WeekState } from '#shared/schemas/week'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday at ten, in UTC.
@@ -29,8 +28,6 @@ async function studioWith(schedule: string | null, count: number, dueAt: number 
   if (!week) throw new Error('The studio has no week.')
   return { ...studio, week }
 }
-
-const dayOf = (week: WeekState, date: string) => week.days.findIndex(day => day.date === date)
 
 describe('the hours of the week', () => {
   it('count what is left of today, nothing on a closed day, and nobody who is away', async () => {
