@@ -37,7 +37,7 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
     const nameOf = (row: ActRow) => (row.memberId === null ? null : names.get(row.memberId) ?? null)
     const inForce = !last.voided && here(last).length > 0
     return [{
-      actId: last.id, rootId: first.id, kind: last.kind, doneAt: doneAt(shown), toldAt: first.toldAt, correctedAt: last === first ? null : last.toldAt,
+      actId: last.id, rootId: first.id, kind: last.kind, doneAt: doneAt(shown), actDoneAt: last.doneAt, toldAt: first.toldAt, correctedAt: last === first ? null : last.toldAt,
       actor: first.actor, by: nameOf(first), correctedBy: last === first ? null : nameOf(last), detail: details(shown),
       pieceIds: [...new Set(subjects.filter(each => each.actId === last.id).map(each => each.pieceId))],
       inForce, takenBack: last.voided, problem: inForce ? problems.get(first.id) ?? null : null,

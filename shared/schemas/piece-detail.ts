@@ -40,6 +40,8 @@ export interface ActLine {
   kind: ActKind
   /** On this piece, which in a row may differ from the others. */
   doneAt: number
+  /** On the last piece of its row: what a correction of the whole act moves. */
+  actDoneAt: number
   /** When the act was told first. */
   toldAt: number
   /** When it was last corrected. */

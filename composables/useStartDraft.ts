@@ -1,0 +1,92 @@
+import type { BatchRequest } from '#shared/schemas/batch'
+import { fromLocal } from '#shared/time'
+import type { StudioZone } from '#shared/time'
+import { startWords } from '#shared/words/start'
+
+const shelf = 'stillwet start'
+
+/** What is typed to start a batch. `scheduleId` 0: no schedule; null: not chosen yet. `names` holds only those changed by hand. */
+export interface StartDraft {
+  clientKey: string
+  scheduleId: number | null
+  name: string
+  count: number | null
+  stem: string
+  names: Record<number, string>
+  sizeUnits: number | null
+  placeId: number | null
+  when: 'now' | 'afternoon' | 'opening' | 'other'
+  day: string
+  time: string
+  orderName: string
+  dueDay: string
+  dueTime: string
+  oldObject: boolean
+}
+
+const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false })
+
+/** "Ledger" from "Ledgers", for a start: what one piece of a batch may be called. */
+export function stemOf(batchName: string): string {
+  const last = batchName.trim().split(/\s+/).at(-1) ?? ''
+  const one = last.length > 3 && last.endsWith('s') && !last.endsWith('ss') ? last.slice(0, -1) : last
+  return one.charAt(0).toUpperCase() + one.slice(1)
+}
+
+const minutesOf = (time: string) => {
+  const [hours, minutes] = time.split(':').map(Number)
+  return hours === undefined || minutes === undefined || !Number.isFinite(hours + minutes) ? null : hours * 60 + minutes
+}
+
+/** A day and a time as typed, as an instant (ms UTC) on the studio's wall; null while either is missing. */
+export function typedInstant(day: string, time: string, zone: StudioZone): number | null {
+  const minutes = minutesOf(time)
+  return /^\d{4}-\d{2}-\d{2}$/.test(day) && minutes !== null ? fromLocal(day, minutes, zone) : null
+}
+
+/** The form of a new batch, kept in this tab until it has started: a reload or a refusal loses nothing. */
+export function useStartDraft() {
+  const draft = reactive(blank())
+  onMounted(() => {
+    try {
+      const kept: unknown = JSON.parse(sessionStorage.getItem(shelf) ?? 'null')
+      if (typeof kept === 'object' && kept !== null) Object.assign(draft, kept)
+    }
+    catch {
+      sessionStorage.removeItem(shelf)
+    }
+    draft.clientKey ||= newClientKey()
+    watch(draft, () => sessionStorage.setItem(shelf, JSON.stringify(draft)), { deep: true })
+  })
+  const stem = computed(() => draft.stem.trim() || stemOf(draft.name))
+  const count = computed(() => Math.min(60, Math.max(0, Math.floor(draft.count ?? 0))))
+  const names = computed(() => Array.from({ length: count.value }, (_, index) => draft.names[index] ?? (count.value === 1 ? stem.value : `${stem.value} ${index + 1}`.trim())))
+
+  function forget() {
+    sessionStorage.removeItem(shelf)
+    Object.assign(draft, { ...blank(), clientKey: newClientKey() })
+  }
+
+  return { draft, stem, count, names, forget }
+}
+
+/** The request a draft makes, or the sentences by field that say what is missing before anybody is asked. */
+export function requestOf(draft: StartDraft, names: readonly string[], startsAt: number | null, zone: StudioZone): { body: BatchRequest } | { fields: Record<string, string> } {
+  const dueAt = draft.dueDay === '' ? null : typedInstant(draft.dueDay, draft.dueTime || '17:00', zone)
+  const fields: Record<string, string> = {
+    ...draft.scheduleId === null ? { scheduleId: startWords.wantSchedule } : {},
+    ...startsAt === null ? { startsAt: startWords.wantWhen } : {},
+    ...names.length === 0 || draft.count === null || !Number.isInteger(draft.count) || draft.count > 60 ? { pieces: startWords.wantCount } : {},
+    ...draft.placeId === null ? { placeId: startWords.wantPlace } : {},
+    ...draft.dueDay === '' && draft.dueTime !== '' ? { 'order.dueAt': startWords.wantDue } : {},
+    ...draft.orderName.trim() === '' && draft.dueDay !== '' ? { 'order.name': startWords.wantOrder } : {},
+  }
+  if (Object.keys(fields).length > 0 || startsAt === null || draft.placeId === null) return { fields }
+  return {
+    body: {
+      clientKey: draft.clientKey, name: draft.name, scheduleId: draft.scheduleId === 0 ? null : draft.scheduleId, pieces: [...names], sizeUnits: draft.sizeUnits ?? 1, placeId: draft.placeId,
+      order: draft.orderName.trim() === '' ? null : { name: draft.orderName, dueAt: dueAt === null ? null : new Date(dueAt).toISOString() },
+      startsAt: new Date(startsAt).toISOString(), oldObject: draft.oldObject,
+    },
+  }
+}
