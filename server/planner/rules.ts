@@ -41,6 +41,8 @@ const latestStart: Rule = traits => Math.min(traits.closing, traits.due - traits
 
 /** Smaller goes first. */
 const rules: readonly Rule[] = [
+  // Work that is late anyway must not push a shutting window shut.
+  traits => traits.closing,
   latestStart,
   traits => traits.due,
   traits => traits.chain / (traits.weight + 0.01),

@@ -143,11 +143,17 @@ function familiesOf(works: readonly StepWork[]): NonNullable<PlanInput['families
   return [...families].filter(([, family]) => family.members.length > 0).map(([id, family]) => ({ id, ...family, mode: 'row' as const }))
 }
 
+/** One job for each batch: like pieces of one job go through their work as a row. */
 function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): NonNullable<PlanInput['jobs']> {
   const pieces = new Map(facts.pieces.map(each => [each.id, each]))
-  return byPiece(works).map((own) => {
+  const batches = new Map<number, StepWork[]>()
+  for (const work of works) {
+    const batchId = pieces.get(work.step.pieceId)?.batchId ?? 0
+    batches.set(batchId, [...batches.get(batchId) ?? [], work])
+  }
+  return [...batches].map(([batchId, own]) => {
     const row = pieces.get(own[0]?.step.pieceId ?? 0)
-    return { id: `piece ${row?.id}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
+    return { id: `batch ${batchId}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
   })
 }
 
