@@ -133,13 +133,21 @@ function halfDay(at: number, clock: Clock, rounding: Rounding): string {
   return rounding === 'up' ? name : `${name} morning`
 }
 
+/** A week off, half a day is more than anybody can know: the day alone, the next one when rounded up. */
+function wholeDay(at: number, clock: Clock, rounding: Rounding): string {
+  const { date, minutes } = clock.zone.wall(at)
+  const day = rounding === 'up' && (minutes > 0 || at % minuteMs !== 0) ? addDays(date, 1) : date
+  return dayName({ date: day, minutes: 0, weekday: weekdayOf(day) }, clock)
+}
+
 /**
- * A predicted instant, no finer than its doubt: to 5 min under 2 h of doubt, to 15 min under a day, else to half a day
- * ("Wed afternoon"). Rounded up, "Wed" means from the start of Wednesday.
+ * A predicted instant, no finer than its doubt: to 5 min under 2 h of doubt, to 15 min under a day, to half a day under
+ * a week ("Wed afternoon"), else to the day. Rounded up, "Wed" means from the start of Wednesday.
  * @param at ms UTC
  * @param doubtMs width of the doubt; how far off the instant is stands in for it where nobody knows better
  */
 export function roughTime(at: number, clock: Clock, rounding: Rounding, doubtMs = Math.abs(at - clock.now)): string {
+  if (doubtMs >= 7 * dayMs) return wholeDay(at, clock, rounding)
   if (doubtMs >= dayMs) return halfDay(at, clock, rounding)
   const grain = (doubtMs < 2 * hourMs ? 5 : 15) * minuteMs
   const rounded = (rounding === 'up' ? Math.ceil(at / grain) : Math.floor(at / grain)) * grain
