@@ -14,7 +14,7 @@ export const materialWords = {
   filter: 'Find by name',
   none: 'No material is called that.',
   noneTitle: 'There are no materials here',
-  failed: 'The materials could not be fetched.',
+  failed: 'The list of materials could not be fetched.',
   failedOne: 'This material could not be fetched.',
   waiting: 'Fetching the materials',
   waitingOne: 'Fetching the sheet',

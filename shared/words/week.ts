@@ -2,7 +2,7 @@ import { isFull } from '#shared/fullest'
 import type { Fullest } from '#shared/fullest'
 import type { BatchLoad, Evidence, Load, WeekDay } from '#shared/schemas/week'
 import type { PlaceKind } from '#shared/terms'
-import { ago, clockTime, roughTime, span } from '#shared/time'
+import { addDays, ago, clockTime, fromLocal, localDate, roughTime, span, weekdayOf } from '#shared/time'
 import type { Clock } from '#shared/time'
 
 /** What the page of the week says. */
@@ -14,19 +14,13 @@ export const weekWords = {
   resource: 'What',
   people: 'People',
   today: 'today',
-  places: 'Places',
+  freeAllWeek: (names: readonly string[]) => `Free all week: ${listed(names).toLowerCase()}.`,
   perDay: 'Places: the fullest moment of the day. People: hours still planned against hours still there.',
   batches: 'Batches against their dates',
   noBatches: 'No batch is under way.',
   noBatchesSays: 'Start a batch, and its planned end shows here against its date.',
   start: 'Start a batch',
   key: 'The bar runs to the planned end; where it fades, what is drying now may still make it later. The flag is the date.',
-  flag: 'date',
-  batch: 'Batch',
-  planned: 'Planned end',
-  due: 'Date',
-  standing: 'How it stands',
-  noDate: 'no date given',
   clashes: 'What finds no time',
   noClashes: 'Everything that can be planned has a time.',
   rests: 'What this rests on',
@@ -113,8 +107,25 @@ export function standingText(batch: BatchLoad): string {
   }
 }
 
-export const endText = (batch: BatchLoad, clock: Clock) => batch.endsAt === null ? '' : roughTime(batch.endsAt, clock, 'up')
-export const dueText = (batch: BatchLoad, clock: Clock) => batch.dueAt === null ? weekWords.noDate : clockTime(batch.dueAt, clock)
+/** "planned end Tue 8 Dec afternoon, date Sun 12:00": no finer than it is known. */
+export function datesText({ endsAt, dueAt }: BatchLoad, clock: Clock): string {
+  return [...endsAt === null ? [] : [`planned end ${roughTime(endsAt, clock, 'up')}`], ...dueAt === null ? [] : [`date ${clockTime(dueAt, clock)}`]].join(', ')
+}
+
+const shortDays = longDays.map(day => day.slice(0, 3))
+
+/** The midnights between two instants (ms UTC) for the axis; labelled every day in a week, else every third: "Wed 9". */
+export function dayTicks(fromAt: number, toAt: number, { zone, now }: Clock): { at: number, label: string | null }[] {
+  const ticks: { at: number, label: string | null }[] = []
+  const today = localDate(now, zone)
+  const every = toAt - fromAt > 8 * 86_400_000 ? 3 : 1
+  for (let ahead = -1; fromLocal(addDays(today, ahead), 0, zone) < toAt; ahead++) {
+    const date = addDays(today, ahead)
+    const at = fromLocal(date, 0, zone)
+    if (at >= fromAt) ticks.push({ at, label: ahead % every === 0 ? `${shortDays[weekdayOf(date) - 1]} ${Number(date.slice(8))}` : null })
+  }
+  return ticks
+}
 
 const listed = (names: readonly string[]) => names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
 
