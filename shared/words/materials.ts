@@ -45,7 +45,7 @@ export const materialWords = {
   gloveName: 'Hands',
 } as const
 
-const solvents: Record<string, string> = { 'none': 'nothing evaporates', 'water': 'water-based', 'mineral spirits': 'thinned with mineral spirits', 'turpentine': 'thinned with turpentine', 'alcohol': 'alcohol-based', 'lacquer thinner': 'thinned with lacquer thinner', 'aliphatic solvent': 'thinned with an aliphatic solvent' }
+const solvents: Record<string, string> = { 'none': 'no thinner', 'water': 'water-based', 'mineral spirits': 'thinned with mineral spirits', 'turpentine': 'thinned with turpentine', 'alcohol': 'alcohol-based', 'lacquer thinner': 'thinned with lacquer thinner', 'aliphatic solvent': 'thinned with an aliphatic solvent' }
 /** "water-based", or the word as it stands when a studio has its own. */
 export const solventText = (solvent: string) => solvents[solvent] ?? solvent
 

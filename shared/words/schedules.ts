@@ -35,7 +35,8 @@ const holds: Record<Hold, string> = { clamps: 'in clamps', press: 'in the press'
 
 /** "45 min", "10 h", "3.5 days": minutes of waiting, no finer than anybody plans by. */
 export function waitSpan(minutes: number): string {
-  if (minutes >= 2880) return `${Number((minutes / 1440).toFixed(1))} days`
+  if (minutes >= 14_400) return `${Math.round(minutes / 1440)} days`
+  if (minutes >= 2880) return `${Math.round(minutes / 720) / 2} days`
   return minutes >= 600 ? `${Math.round(minutes / 60)} h` : span(minutes < 120 ? Math.ceil(minutes / 5) * 5 : Math.ceil(minutes / 15) * 15)
 }
 
