@@ -74,8 +74,9 @@ function kindCautions(spec: MaterialSpec): CautionKey[] {
   const found: CautionKey[] = []
   if (spec.solvent !== 'water' && spec.solvent !== 'none') found.push('vapour', 'flames', 'fan', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can')
   if (spec.solvent === 'alcohol' || spec.solvent === 'lacquer thinner') found.push('pouring')
-  if (spec.dryingOil) found.push('oily rags', 'waste can', 'sleeping room')
+  if (spec.dryingOil) found.push('oily rags', 'waste can', 'sleeping room', 'airing')
   if (spec.isocyanate) found.push('isocyanate')
+  if (spec.glovesUntil) found.push('gloves')
   return found
 }
 

@@ -7,36 +7,44 @@ export const cautionDeferral = 'Follow the product\'s safety data sheet and your
 
 const health = {
   'vapour': {
-    text: 'This gives off vapour you should not breathe. Work with open air on two sides or an exhaust, and keep it going while the coat is wet and after you stop.',
+    text: 'Its vapour can harm you. Open windows on two sides or run an exhaust that blows outdoors. Keep it going while the coat is wet and after you stop. Your nose is no guide: it tires, and some vapour has no smell.',
     basis: 'published', scope: 'every material with a solvent',
   },
+  'airing': {
+    text: 'The film gives off vapour for days as it hardens. Keep the windows open for two to three days. Tell the neighbours if you share air with them.',
+    basis: 'published', scope: 'drying oils and oil varnish',
+  },
   'water vapour': {
-    text: 'Water-based does not mean vapour-free. A little solvent keeps coming off for days. Keep the air moving.',
+    text: 'Water-based does not mean vapour-free. A little solvent keeps coming off for days, and from paper or board for months. Keep the air moving.',
     basis: 'published', scope: 'water-based finishes',
   },
   'dust mask': {
-    text: 'A dust mask stops dust, not vapour. Vapour needs the right cartridges, fitted to your face and changed in time, and still needs fresh air.',
-    basis: 'published', scope: 'every step with a solvent',
+    text: 'A dust mask stops dust, not vapour. Vapour needs the right cartridges, fitted to your face and changed in time. A beard breaks the seal. No mask makes up for bad air, and no filter helps with the hardener of two-part paint.',
+    basis: 'published, check the data sheet', scope: 'every step with a solvent',
   },
   'sleeping room': {
-    text: 'Do not let it dry in a bedroom, or in a room that shares its air with one.',
+    text: 'Do not let it dry in a bedroom, or in a room that shares its air with one. The limits for work were not made for sleepers.',
     basis: 'published', scope: 'every material with a solvent or a drying oil',
   },
   'children': {
-    text: 'Keep children, pregnant people and animals out until it is fully dry and the room has been aired.',
-    basis: 'published', scope: 'every material with a solvent',
+    text: 'Keep children and pets out till it is dry through and the room has been aired. The same goes for anybody who is pregnant or short of breath. Birds feel it first.',
+    basis: 'published, check the data sheet', scope: 'every material with a solvent',
   },
   'symptoms': {
-    text: 'Headache, dizziness or stinging eyes: stop, go out into the air, tell somebody. Do not go back alone.',
+    text: 'Headache, dizzy or stinging eyes? Stop and go out into the air. Tell somebody, and do not go back alone. If it does not pass, call a doctor or your poison line.',
     basis: 'published', scope: 'every material with a solvent',
   },
   'isocyanate': {
-    text: 'The hardener in this can give asthma that stays for life, and you cannot smell it coming. Never spray it in a studio. A filter mask is not enough. Keep it off your skin.',
+    text: 'The hardener in this can give you asthma for life, and you cannot smell it coming. Do not spray it in a studio. A filter mask is not enough: it takes air from outside through a hose. Keep it off your skin. Water-based kinds can hold it too. Ask a work health expert first.',
     basis: 'published', scope: 'materials with isocyanate',
   },
   'epoxy skin': {
-    text: 'A skin allergy can start after one touch or after many, and it stays. No bare skin: thick gloves, changed often. Never wash it off with solvent.',
+    text: 'A skin allergy can start after one touch or after many, and it stays for life. No bare skin. Wear thick nitrile gloves and change them often; cotton ones make it worse. Never wash it off with solvent.',
     basis: 'published', scope: 'epoxy resins and glues',
+  },
+  'gloves': {
+    text: 'Wear gloves until it is fully cured. Half-cured, it harms skin more than it shows.',
+    basis: 'published', scope: 'epoxy, two-part finishes and glue with isocyanate',
   },
   'part-cured dust': {
     text: 'Do not sand it before it is fully cured. The dust of half-cured resin harms skin and lungs.',
@@ -47,8 +55,8 @@ const health = {
     basis: 'published', scope: 'cyanoacrylate glue',
   },
   'sanding dust': {
-    text: 'Catch the dust where you sand and vacuum it up; do not sweep or blow. Wear a dust mask. Keep dust from flames.',
-    basis: 'published', scope: 'every sanding step',
+    text: 'Catch the dust where you sand and vacuum it up; do not sweep or blow. Wear a good dust mask. Wood dust can cause cancer of the nose, and fillers may hold silica. Keep dust from flames.',
+    basis: 'published, check the data sheet', scope: 'every sanding step',
   },
   'casein lime': {
     text: 'Wet, it is alkaline like lime: it burns eyes and dries skin. Wear gloves and glasses when you mix it. It stains oak dark.',
@@ -59,46 +67,62 @@ const health = {
     basis: 'published, check the data sheet', scope: 'latex and some water-based glues',
   },
   'old paint': {
-    text: 'Old paint may hold lead. Until somebody qualified has tested it, treat it as lead: do not dry-sand, scrape, burn or heat it.',
+    text: 'Old paint may hold lead. Treat it as lead until an expert has tested it; a home kit does not count. Do not dry-sand, scrape, burn, heat, drill or cut it. Work wet, keep children out, and wash before you eat.',
     basis: 'published', scope: 'old painted objects',
   },
   'green cloth': {
-    text: 'Old bright-green cloth or paper may hold arsenic. Do not sand, scrape or cut it before it has been tested.',
+    text: 'Bright green cloth or paper from long ago may hold arsenic. Do not sand, scrape, drill or cut it before an expert has tested it.',
     basis: 'published, check the data sheet', scope: 'old bindings',
   },
+  'mould': {
+    text: 'Do not brush or sand mould dry. Bag the piece and ask someone who cleans old books or furniture.',
+    basis: 'common practice', scope: 'old objects with mould',
+  },
+  'metal coating': {
+    text: 'An old metal coat of unknown kind may hold lead, chrome or cadmium. Do not sand, heat or cut it till an expert has tested it.',
+    basis: 'published, check the data sheet', scope: 'old objects with a metal coating',
+  },
   'paint stripper': {
-    text: 'Do not use a stripper with methylene chloride.',
-    basis: 'published', scope: 'stripping',
+    text: 'Do not use a stripper with methylene chloride. It has killed people in closed rooms, and most uses are banned. Ask the shop for another kind.',
+    basis: 'published, check the data sheet', scope: 'stripping',
+  },
+  'ask first': {
+    text: 'No sum can say how much air this needs: it harms through the skin, or at very low levels. Keep it off your skin and out of your lungs. Ask a work health expert before you use it.',
+    basis: 'published', scope: 'solvents that pass the skin, cause allergy or can cause cancer',
   },
 } satisfies Record<string, CautionText>
 
 const fire = {
   'flames': {
-    text: 'Put out flames and pilot lights and switch off heaters and motors before you open it, and leave them off until no vapour is left. The vapour sinks, creeps along the floor and can flash back.',
+    text: 'Before you open it, put out flames and pilot lights. Switch off heaters, stoves and motors. Open windows and doors on two sides, and do not smoke. Leave all that off till the vapour has gone. It sinks, creeps along the floor and can flash back.',
     basis: 'published', scope: 'materials that catch fire easily',
   },
   'fan': {
-    text: 'A house fan in the vapour can spark. Blow clean air across the work from outside the vapour, or use a fan made for it.',
+    text: 'A house fan in the vapour can spark. Blow clean air across the work from outside the vapour, or use a fan made for it. No heater and no warm air while the film is wet.',
     basis: 'published', scope: 'materials that catch fire easily',
+  },
+  'phones': {
+    text: 'Phones, tablets and chargers stay out of the spray room. They can spark, and they are not made for vapour. Write it down when you come out.',
+    basis: 'common practice', scope: 'spray rooms and booths',
   },
   'pouring': {
     text: 'Touch metal to metal when you pour, with both cans earthed. Pour slowly. No open plastic pails.',
     basis: 'published', scope: 'thin solvents in cans',
   },
   'aerosol': {
-    text: 'Short bursts, not near flames or children. Never pierce or burn the can. Keep it below 50 C.',
+    text: 'Short bursts, not near flames or children. Open up after you spray. Never pierce or burn the can. Keep it below 50 C.',
     basis: 'published', scope: 'spray cans',
   },
   'oily rags': {
-    text: 'Oily rags heat up by themselves and can catch fire hours later. Never ball, bag or bin them. Lay them flat in one layer outdoors, or put them under water in a lidded metal can. Pads, towels, steel wool and the sander bag too.',
+    text: 'Oily rags heat up on their own and can catch fire hours later. Never ball, bag or bin them. Lay them flat in one layer outdoors, away from walls, till they are stiff. Or put them under water in a metal can with a lid, for the waste depot. The same goes for pads, towels, steel wool, drop sheets, spray filters and the sander bag.',
     basis: 'published', scope: 'every material with a drying oil',
   },
   'waste can': {
-    text: 'Put waste with finish on it into a covered metal can and empty the can every day.',
+    text: 'Put waste with finish on it in a metal can with a lid at once. Take it out of the house each day.',
     basis: 'published', scope: 'every material with a solvent or a drying oil',
   },
   'mixed residue': {
-    text: 'Clean out old overspray before you change the kind of finish. Some mixes, such as lacquer over drying oil, light themselves.',
+    text: 'Clean out old overspray before you change the kind of finish. Some mixes can set themselves on fire, such as lacquer over oil.',
     basis: 'published', scope: 'sprayed lacquers and enamels',
   },
   'exotherm': {

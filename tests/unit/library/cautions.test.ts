@@ -4,6 +4,7 @@ import type { CautionKey } from '#shared/library/cautions'
 import { libraryMaterials } from '#shared/library/index'
 import { librarySchedules } from '#shared/library/schedules'
 import { systemRules } from '#shared/library/systems'
+import { readingAge, syllables } from './reading-age'
 
 const carries = (keys: readonly CautionKey[], wanted: readonly CautionKey[]) => wanted.filter(key => !keys.includes(key))
 
@@ -12,8 +13,9 @@ describe('cautions', () => {
     for (const m of libraryMaterials) {
       const wanted: CautionKey[] = []
       if (!['water', 'none'].includes(m.solvent)) wanted.push('vapour', 'flames', 'fan', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can')
-      if (m.dryingOil) wanted.push('oily rags', 'waste can', 'sleeping room')
+      if (m.dryingOil) wanted.push('oily rags', 'waste can', 'sleeping room', 'airing')
       if (m.isocyanate) wanted.push('isocyanate')
+      if (m.glovesUntil) wanted.push('gloves')
       if (m.key.startsWith('epoxy')) wanted.push('epoxy skin', 'part-cured dust', 'exotherm')
       if (m.key === 'cyanoacrylate') wanted.push('cyanoacrylate')
       if (m.key.startsWith('spray')) wanted.push('aerosol')
@@ -38,7 +40,7 @@ describe('cautions', () => {
   it('are each known, and each used or meant for a step or an old object', () => {
     const used = new Set<string>(libraryMaterials.flatMap(m => m.cautions))
     for (const key of used) expect(findCaution(key), key).not.toBeNull()
-    const ofSteps = ['old paint', 'green cloth', 'paint stripper']
+    const ofSteps = ['old paint', 'green cloth', 'mould', 'metal coating', 'paint stripper', 'phones', 'ask first']
     expect(cautions.map(c => c.key).filter(key => !used.has(key)).sort()).toEqual(ofSteps.sort())
     expect(findCaution('gravity')).toBeNull()
   })
@@ -52,6 +54,21 @@ describe('cautions', () => {
     }
     expect(new Set(cautions.map(c => c.text)).size).toBe(cautions.length)
     expect(cautionDeferral).toMatch(/safety data sheet and your local rules\.$/)
+  })
+})
+
+describe('their reading age', () => {
+  it('is twelve or below for every text, and for what is said after them', () => {
+    const old = [...cautions.map(({ key, text }) => ({ key, text })), { key: 'deferral', text: cautionDeferral }].filter(({ text }) => readingAge(text) > 12)
+    expect(old).toEqual([])
+  })
+
+  it('is measured: syllables as they are said, short sentences young, long words old', () => {
+    const said: Record<string, number> = { people: 2, fire: 1, heated: 2, rubbed: 1, animals: 3, isocyanate: 5, turpentine: 3, material: 4, being: 2, station: 2, area: 3 }
+    expect(Object.fromEntries(Object.keys(said).map(word => [word, syllables(word)]))).toEqual(said)
+    // Six words of one syllable in one sentence: 0.39 x 6 + 11.8 - 15.59 + 5 = 3.55.
+    expect(readingAge('The cat sat on the mat.')).toBeCloseTo(3.55, 6)
+    expect(readingAge('Polymerisation of isocyanate prepolymers necessitates respiratory protective equipment.')).toBeGreaterThan(20)
   })
 })
 
