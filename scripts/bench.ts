@@ -1,8 +1,9 @@
 import { cpus } from 'node:os'
 import { benchPlanner } from './bench/planner'
 import { benchPredict } from './bench/predict'
+import { benchVapour } from './bench/vapour'
 
-const benches: Record<string, () => string[] | Promise<string[]>> = { planner: benchPlanner, predict: benchPredict }
+const benches: Record<string, () => string[] | Promise<string[]>> = { planner: benchPlanner, predict: benchPredict, vapour: benchVapour }
 
 const usage = `npm run bench [-- NAME ...]
 

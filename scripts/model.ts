@@ -1,6 +1,5 @@
-import { readFileSync } from 'node:fs'
 import { dryingTools } from '#shared/drying/tools'
-import { BadField } from './model/fields'
+import { runCommand } from './model/command'
 import { readCase } from './model/read-case'
 import { runCase } from './model/run-case'
 
@@ -16,42 +15,6 @@ A case: { "material": "<starter id>" or a material written out, "appliedAt": ISO
 
 Ends with 0, or with 2 and one line naming the field that cannot be used.`
 
-function readInput(source: string): unknown {
-  let text: string
-  try {
-    text = readFileSync(source === '-' ? 0 : source, 'utf8')
-  }
-  catch {
-    throw new BadField(`${source}: expected a file that can be read`)
-  }
-  try {
-    return JSON.parse(text)
-  }
-  catch {
-    throw new BadField(`${source === '-' ? 'standard input' : source}: expected JSON`)
-  }
-}
+const tools = dryingTools()
 
-function main(args: readonly string[]): number {
-  const [source] = args
-  if (source === '--help' || source === '-h') {
-    console.log(usage)
-    return 0
-  }
-  try {
-    if (source === undefined || args.length > 1) throw new BadField('FILE: expected one file, or - for standard input')
-    const input = readInput(source)
-    const tools = dryingTools()
-    const cases = Array.isArray(input) ? input.map((one, i) => readCase(one, `[${i}]`)) : [readCase(input, '')]
-    const results = cases.map(one => runCase(one, tools))
-    process.stdout.write(`${JSON.stringify(Array.isArray(input) ? results : results[0], null, 2)}\n`)
-    return 0
-  }
-  catch (error) {
-    if (!(error instanceof BadField)) throw error
-    console.error(error.message)
-    return 2
-  }
-}
-
-process.exitCode = main(process.argv.slice(2))
+process.exitCode = runCommand(process.argv.slice(2), usage, (value, place) => runCase(readCase(value, place), tools))

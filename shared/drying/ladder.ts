@@ -11,7 +11,8 @@ export interface AirSpan { clock: RoomClock, fromAt: number, toAt: number | null
 /** Speed taken for "the air moves" when nobody measured it, m/s: a planning value. */
 export const movingAirSpeed = 1
 
-const coatFactor = { thin: 0.7, normal: 1, full: 1.5, flood: 2.5 } as const
+/** How thick a coat of each size lies, as a multiple of a normal one (planning values). */
+export const coatFactor = { thin: 0.7, normal: 1, full: 1.5, flood: 2.5 } as const
 const groundFactor: Record<Ground, number> = { 'porous': 0.35, 'primed': 1, 'sealed': 1.8, 'non-absorbent': 1.8 }
 
 /** A stretch of one coat's life with one room, one wind and one lid: sheet minutes gained per unit of the table's force. */
