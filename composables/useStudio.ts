@@ -17,8 +17,6 @@ export async function useStudio(wallToken: string | null = null) {
   const { session } = useSession()
   const shell = useShell()
   const deviceNow = useClock()
-  await callOnce(`studio ${wallToken ?? ''}`, () => store.load(wallToken), { mode: 'navigation' })
-
   const now = computed(() => deviceNow.value + store.clockShift)
   const zone = computed(() => studioZone(store.state?.studio.zone ?? 'UTC'))
   const clock = computed((): Clock => ({ now: now.value, zone: zone.value }))
@@ -47,5 +45,7 @@ export async function useStudio(wallToken: string | null = null) {
   useEventListener('online', () => void untold.tellAll())
   useIntervalFn(() => untold.acts.length > 0 && void untold.tellAll(), 15_000)
 
+  // Last, for after a wait nothing can be tied to the page any more: what was would never start, or never end.
+  await callOnce(`studio ${wallToken ?? ''}`, () => store.load(wallToken), { mode: 'navigation' })
   return { store, state: computed(() => store.state), pieces, now, zone, clock, heardAt, cutOff, who, reload: () => store.load(wallToken) }
 }
