@@ -12,8 +12,8 @@ export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling
   const materialId = ref<number | null>(null)
   const chosen = ref<number[]>([])
   const when = ref<TimeAnswer | null>({ kind: 'ago', minutes: 0 })
-  const size = ref<CoatSize>('normal')
-  const hold = ref<Hold | 'free'>('free')
+  const size = ref<CoatSize | null>('normal')
+  const hold = ref<Hold | 'free' | null>('free')
   const problem = ref<string | null>(null)
 
   const all = computed(() => [...materials.value?.recent ?? [], ...materials.value?.others ?? []])
@@ -28,7 +28,7 @@ export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling
   /** Tells one part: its step, or no step at all. */
   async function tellPart({ step, pieces }: PutOnPart, what: RecentMaterialWire, doneAt: number) {
     const glue = step ? step.kind === 'glue-up' : what.glue
-    const body = { step: step?.key ?? null, materialVersionId: what.versionId, size: size.value, ...step === null ? { name: what.name } : {}, ...glue && hold.value !== 'free' ? { hold: hold.value } : {} }
+    const body = { step: step?.key ?? null, materialVersionId: what.versionId, size: size.value ?? 'normal', ...step === null ? { name: what.name } : {}, ...glue && hold.value !== null && hold.value !== 'free' ? { hold: hold.value } : {} }
     await say({ kind: glue ? 'glue-up on' : 'coat on', body, pieces: pieces.map(read => read.piece), doneAt, step: step?.name ?? null, material: what.name })
   }
 
