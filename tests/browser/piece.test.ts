@@ -39,7 +39,7 @@ beforeAll(async () => {
   browser = await openBrowser()
   owner = await firstStudio(server.origin)
   const room = await owner.post<{ id: number }>('/api/rooms', { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
-  placeId = (await owner.post<{ id: number }>('/api/places', { roomId: room.body.id, name: 'Shelf A', kind: 'shelf', capacity: 12, sort: 0 })).body.id
+  placeId = (await owner.post<{ id: number }>('/api/places', { roomId: room.body.id, name: 'Shelf A', kind: 'shelf', capacity: 60, sort: 0 })).body.id
   await owner.post('/api/places', { roomId: room.body.id, name: 'Hook', kind: 'hook', capacity: 1, sort: 1 })
   boxId = (await owner.get<ScheduleWire[]>('/api/schedules')).body.find(each => each.libraryKey === 'painted-waxed-box')?.id ?? 0
 })
@@ -55,7 +55,7 @@ describe('a piece', () => {
     const { page } = await openPage(browser, server.origin, {}, owner)
     await visit(page, `/pieces/${id}`)
     await coatLine(page).getByRole('button', { name: /^Correct/ }).click()
-    await page.getByRole('radio', { name: '60 min ago' }).check()
+    await page.getByRole('dialog').getByRole('radio', { name: '60 min ago' }).check()
     await page.getByRole('button', { name: 'Correct it' }).click()
     await page.getByText('Corrected: coat on: first paint on the lid top.').waitFor()
     await coatLine(page).getByText('Before that it read:').waitFor()
@@ -87,9 +87,9 @@ describe('a piece', () => {
     await page.keyboard.press('Escape')
     await page.waitForFunction(() => document.activeElement?.textContent?.startsWith('Correct'))
     await page.keyboard.press('Enter')
-    await page.getByRole('radio', { name: 'other' }).focus()
+    await page.getByRole('dialog').getByRole('radio', { name: 'other' }).focus()
     await page.keyboard.press('ArrowLeft')
-    await page.getByRole('radio', { name: '60 min ago', checked: true }).waitFor()
+    await page.getByRole('dialog').getByRole('radio', { name: '60 min ago', checked: true }).waitFor()
     await page.keyboard.press('Enter')
     await page.getByText('Corrected: coat on: first paint on the lid top.').waitFor()
     expect(Date.now() - Date.parse((await filmOf(id))?.endedAt ?? '')).toBeGreaterThan(55 * minute)
