@@ -1,4 +1,5 @@
 import { fileURLToPath } from 'node:url'
+import { defineVitestProject } from '@nuxt/test-utils/config'
 import { defineConfig } from 'vitest/config'
 
 const root = (path: string) => fileURLToPath(new URL(path, import.meta.url))
@@ -13,6 +14,10 @@ const served = (name: string) => ({
 export default defineConfig({
   test: {
     reporters: ['default', './tests/helpers/tally-reporter.ts'],
-    projects: [pure('unit'), pure('outside'), served('api'), served('browser')],
+    projects: [
+      pure('unit'), pure('outside'),
+      await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt', environmentOptions: { nuxt: { domEnvironment: 'happy-dom' } } } }),
+      served('api'), served('browser'),
+    ],
   },
 })
