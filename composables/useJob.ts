@@ -1,3 +1,4 @@
+import { controlWords } from '#shared/words/controls'
 import type { ComputedRef } from 'vue'
 import { actsOf, filmsOf } from '#shared/hands-acts'
 import type { ActChoice } from '#shared/hands-acts'
@@ -41,7 +42,7 @@ export function useJob(job: ComputedRef<Job>) {
   /** Tells a choice about the pieces that are meant. True once it was told, kept or refused; the sheet says which. */
   async function choose(act: ActChoice): Promise<boolean> {
     const meant = job.value.pieces.filter(each => !left.value.includes(each.read.piece.id))
-    problem.value = meant.length === 0 ? handsWords.noneChosen : when.value === null ? handsWords.noTime : null
+    problem.value = meant.length === 0 ? handsWords.noneChosen : when.value === null ? controlWords.timeWanted : null
     if (problem.value !== null || when.value === null || busy.value) return false
     const goes = placeId.value !== null && (act.kind === 'glue-up on' || act.kind === 'it is out') ? { placeId: placeId.value } : {}
     const partIds = act.perPart ? [...new Set(meant.flatMap(each => each.turn.turn.partIds))] : undefined

@@ -1,3 +1,4 @@
+import { controlWords } from '#shared/words/controls'
 import { piecesByPlace, putOnParts } from '#shared/put-on'
 import type { PutOnPart } from '#shared/put-on'
 import type { RecentMaterialsWire, RecentMaterialWire } from '#shared/schemas/material'
@@ -35,7 +36,7 @@ export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling
   /** @param asSteps whether pieces that wait for this material take it as the step that waits */
   async function done(asSteps: boolean) {
     const what = material.value
-    problem.value = !what ? putOnWords.wantsMaterial : reads.value.length === 0 ? putOnWords.wantsPieces : when.value === null ? putOnWords.wantsTime : null
+    problem.value = !what ? putOnWords.wantsMaterial : reads.value.length === 0 ? putOnWords.wantsPieces : when.value === null ? controlWords.timeWanted : null
     if (problem.value !== null || !what || when.value === null || busy.value) return
     const doneAt = answeredAt(when.value, studio.now.value)
     for (const part of asSteps ? parts.value : [{ step: null, pieces: reads.value }]) await tellPart(part, what, doneAt)

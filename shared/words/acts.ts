@@ -3,7 +3,7 @@ export const actRefusals = {
   somebodyElse: 'Somebody else was at this piece a moment ago. Here is how it stands now; say it again if it still holds.',
   noPiece: 'One of these pieces is not in this studio.',
   gonePiece: (name: string) => `${name} has left the studio.`,
-  future: 'The time lies ahead of now. Give the time it was done.',
+  future: 'The time lies ahead of now. Give an earlier one.',
   tooOld: 'The time is more than 14 days back. Corrections reach back 14 days.',
   notYourStep: (kind: string) => `The owner has not given you steps of this kind: ${kind}. Ask a maker to record it.`,
   mayNotMove: (name: string) => `${name} may not be handled yet. Ask a maker to move it.`,

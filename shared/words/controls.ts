@@ -21,6 +21,7 @@ export const controlWords = {
   timeOther: 'other',
   timeDay: 'Day',
   timeClock: 'Time',
+  timeWanted: 'Give the time it was done.',
   timeWrong: 'Time: give hours and minutes, such as 13:40, not later than now.',
 } as const
 

@@ -28,7 +28,6 @@ export const handsWords = {
   which: 'Which of them',
   none: 'None',
   noneChosen: 'Choose at least one piece.',
-  noTime: 'Give the time it was done.',
   where: 'Where they go',
   asItStands: 'Stays where it stands',
   othersSteps: 'For others',

@@ -19,7 +19,6 @@ export const putOnWords = {
   free: 'Nothing',
   wantsMaterial: 'Choose what you put on.',
   wantsPieces: 'Choose the pieces it went on.',
-  wantsTime: 'Give the time it was done.',
   outside: 'Outside the schedule',
   noPieces: 'No pieces in the studio yet',
   noPiecesSays: 'Start a batch first; it needs no finishing schedule.',
