@@ -60,12 +60,14 @@ export function elapsedText({ likelyMin, giveTillMin, promised }: WaitWire): str
   return `likely ${span(likelyMin)}${till}${promised ? '' : ', part of it only by touch tests'}`
 }
 
-/** "1 h 50 min of hands for 6". */
-export const handsText = (minutes: number, pieces: number) => `${span(minutes)} of hands for ${pieces}`
+/** "1 h 50 min of hands for 6"; never in days, for a day of hands is not a day of the clock. */
+export function handsText(minutes: number, pieces: number): string {
+  return `${minutes < 600 ? span(minutes) : `${Math.round(minutes / 60)} h`} of hands for ${pieces}`
+}
 
 export const stepsText = (count: number) => (count === 1 ? '1 step' : `${count} steps`)
 
-export const elapsedNote = 'Times run round the clock in the studio’s usual air, with nothing else in the way.'
+export const elapsedNote = 'Times run round the clock in the studio’s usual air, for one piece with nothing else in the way.'
 
 /** "Shelf A, Front bench: 4 of 20 free". */
 export const placeText = (place: string, room: string, free: number, capacity: number) => `${place}, ${room}: ${free > 0 ? `${free} of ${capacity} free` : 'full'}`
