@@ -13,6 +13,8 @@ export interface StandingPiece {
   moment: string | null
   /** How the next moment is said: plain, a step that may begin, or one whose last moment is near. */
   tone: 'plain' | 'open' | 'shutting'
+  /** So many pieces alike beside one another, drawn once; a press shows them one by one. */
+  count?: number
 }
 
 /** A joint held by one clamp or several side by side. */

@@ -6,6 +6,8 @@ import type { Wire } from '#shared/schemas/wire'
 /** A device whose clock is off by more than this is read by the studio's clock. */
 const clockSlackMs = 60_000
 
+const isAbsent = (error: unknown) => typeof error === 'object' && error !== null && 'statusCode' in error && error.statusCode === 404
+
 /** The studio as this page last heard of it. State only: what it means is asked of `#shared/verdict`. */
 export const useStudioStore = defineStore('studio', () => {
   const state = shallowRef<StudioState | null>(null)
@@ -13,6 +15,8 @@ export const useStudioStore = defineStore('studio', () => {
   const heardAt = ref<number | null>(null)
   const clockShift = ref(0)
   const failed = ref(false)
+  /** The wall link opens nothing: revoked, or never made. */
+  const refused = ref(false)
   let asking: Promise<void> | null = null
 
   async function ask(wallToken: string | null) {
@@ -24,8 +28,14 @@ export const useStudioStore = defineStore('studio', () => {
       heardAt.value = now
       clockShift.value = Math.abs(state.value.at - now) > clockSlackMs ? state.value.at - now : 0
       failed.value = false
+      refused.value = false
     }
     catch (error) {
+      if (wallToken !== null && isAbsent(error)) {
+        refused.value = true
+        state.value = null
+        return
+      }
       failed.value = true
       if (state.value === null) throw error
     }
@@ -42,5 +52,5 @@ export const useStudioStore = defineStore('studio', () => {
     heardAt.value = Math.max(heardAt.value ?? 0, at)
   }
 
-  return { state, heardAt, clockShift, failed, load, hear }
+  return { state, heardAt, clockShift, failed, refused, load, hear }
 })

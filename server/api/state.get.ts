@@ -1,9 +1,13 @@
 import { studioState } from '~~/server/services/studio-state'
+import { wallState } from '~~/server/services/wall-state'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { toWire } from '#shared/schemas/wire'
 
-/** GET /api/state: the studio as it stands, for every screen; by session or by `?wall=`. */
+/** GET /api/state: the studio as it stands, for every screen; by session, or what a wall may know of it by `?wall=`. */
 export default defineStudioHandler({
   may: 'wall',
-  run: ({ db, studio, now }) => toWire(studioState(db, studio, now)),
+  run: ({ db, studio, person, now }) => {
+    const state = studioState(db, studio, now)
+    return toWire(person ? state : wallState(state))
+  },
 })

@@ -6,8 +6,12 @@ import { scoped } from '~~/server/utils/scoped'
 import { roomAirs } from '~~/server/work/air'
 import { preparedMaterials } from '~~/server/work/materials'
 import { airAt } from '#shared/air/room'
+import { driverRate } from '#shared/drying/rates'
 import { trackRoom } from '#shared/drying/tools'
 import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
+
+/** What most data sheets of water-based coatings give their times for. */
+const sheetAir = { tempC: 20, rh: 0.5 }
 
 type Reader = Database | Transaction
 
@@ -25,6 +29,7 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
     return {
       id: row.id, name: row.name, heated: row.heated, outdoor: row.outdoor, sprayArea: row.sprayArea,
       air: air ? { tempC: air.tempC, rh: air.rh, readAt: known.readings.filter(each => each.at <= now).at(-1)?.at ?? null, assumed: air.assumed } : null,
+      waterSpeed: air ? driverRate('water', air, sheetAir) : null,
       keepOut: closed ? { sinceAt: closed.fromAt, opensBy: names.get(closed.opensByMemberId ?? 0) ?? null } : null,
     }
   })

@@ -114,6 +114,8 @@ export interface RoomState {
   outdoor: boolean
   sprayArea: boolean
   air: { tempC: number, rh: number, readAt: number | null, assumed: boolean } | null
+  /** How fast the water of a coat leaves in this air against a sheet's usual 20 °C and 50 %; null without air. */
+  waterSpeed: number | null
   keepOut: { sinceAt: number, opensBy: string | null } | null
 }
 

@@ -1,0 +1,91 @@
+import type { SessionState, StudioState } from '#shared/schemas/piece-state'
+import type { DayPeg } from '#shared/shelf'
+import { clockTime, fromLocal, addDays, localDate, span } from '#shared/time'
+import type { Clock } from '#shared/time'
+import { aboutToShutMs } from '#shared/verdict/begin'
+import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
+import { boardWords, dayNote, dueSince, startByText } from '#shared/words/board'
+import { groupNames } from '#shared/words/group'
+import { stepNoun } from '#shared/words/steps'
+import { asSentence } from '#shared/words/verdict'
+
+/** The day ruler: what needs hands until the day ends, pegged to its hours. Instants in ms UTC. */
+export interface DayPlan { fromAt: number, toAt: number, note: string, pegs: DayPeg[] }
+
+const hour = 3_600_000
+/** Rags are asked about so long after the last oil, and again before anybody leaves. */
+const ragsAfter = hour / 2
+
+interface Member { piece: ReadPiece, turn: ReadTurn }
+
+function membersOf(session: SessionState, byTurn: ReadonlyMap<number, Member>): Member[] {
+  return session.turnIds.flatMap(id => byTurn.get(id) ?? [])
+}
+
+const minutesOf = (members: readonly Member[]) => {
+  const setup = Math.max(0, ...members.map(({ turn }) => turn.turn.setupMin + turn.turn.cleanMin))
+  return setup + members.reduce((sum, { turn }) => sum + turn.turn.pieceMin, 0)
+}
+
+function plainly(at: number, members: readonly Member[], clock: Clock): { says: string, urgent: boolean } {
+  const length = span(minutesOf(members))
+  return { says: at < clock.now ? `${dueSince(at, clock)}, ${length}` : `${clockTime(at, clock)}, ${length}`, urgent: false }
+}
+
+function sessionPegs(state: StudioState, byTurn: ReadonlyMap<number, Member>, clock: Clock, until: number): DayPeg[] {
+  return state.sessions.flatMap((session): DayPeg[] => {
+    const members = membersOf(session, byTurn).filter(({ turn }) => turn.turn.status === 'waiting')
+    const first = members[0]
+    if (!first || session.startsAt >= until) return []
+    const { step } = first.turn.turn
+    const pressed = session.lastStartAt !== null && session.lastStartAt < until
+    return [{
+      key: `session ${session.id}`, at: Math.max(session.startsAt, clock.now),
+      title: `${asSentence(stepNoun(step.kind, step.name)).slice(0, -1)}, ${groupNames(members.map(({ piece }) => piece.piece.name))}`,
+      ...pressed ? lastStart(session, members.length, clock) : plainly(session.startsAt, members, clock),
+    }]
+  })
+}
+
+function lastStart(session: SessionState, size: number, clock: Clock): { says: string, urgent: boolean } {
+  const at = session.lastStartAt ?? session.startsAt
+  return { says: startByText(at, size, clock), urgent: at - clock.now <= aboutToShutMs }
+}
+
+/** Checks inside rests and takings-out that no session holds, those alike in time and name together. */
+function checkPegs(pieces: readonly ReadPiece[], inSession: ReadonlySet<number>, clock: Clock, until: number): DayPeg[] {
+  const groups = new Map<string, { at: number, what: string, names: string[], minutes: number }>()
+  for (const piece of pieces) {
+    for (const { turn } of piece.turns) {
+      if (turn.kind === 'work' || turn.wantedAt === null || turn.wantedAt >= until || inSession.has(turn.turnId)) continue
+      const what = turn.name || turn.step.name
+      const key = `${what} ${Math.round(turn.wantedAt / (hour / 4))}`
+      const known = groups.get(key) ?? { at: turn.wantedAt, what, names: [], minutes: 0 }
+      groups.set(key, { at: Math.max(known.at, turn.wantedAt), what, names: [...known.names, piece.piece.name], minutes: known.minutes + turn.pieceMin })
+    }
+  }
+  return [...groups].map(([key, { at, what, names, minutes }]) => ({
+    key: `check ${key}`, at: Math.max(at, clock.now), title: `${asSentence(what).slice(0, -1)}, ${groupNames(names)}`, urgent: false,
+    says: [at <= clock.now ? dueSince(at, clock) : clockTime(at, clock), ...minutes > 0 ? [span(minutes)] : []].join(', '),
+  }))
+}
+
+function ragPegs(state: StudioState, clock: Clock): DayPeg[] {
+  return state.rags.filter(each => each.sinceAt + ragsAfter <= clock.now)
+    .map(each => ({ key: `rags ${each.id}`, at: clock.now, title: boardWords.rags(each.room), says: boardWords.ragsAsk, urgent: true }))
+}
+
+/** What needs hands today, from the plan's sessions, checks, rags and the end of the day. */
+export function dayPlan(state: StudioState, pieces: readonly ReadPiece[], clock: Clock): DayPlan {
+  const { now, zone } = clock
+  const midnight = fromLocal(addDays(localDate(now, zone), 1), 0, zone)
+  const closesAt = state.hours.filter(each => each.closesAt > now).at(-1)?.closesAt ?? null
+  const byTurn = new Map(pieces.flatMap(piece => piece.turns.map((turn): [number, Member] => [turn.turn.turnId, { piece, turn }])))
+  const inSession = new Set(state.sessions.flatMap(session => session.turnIds))
+  const work = [...sessionPegs(state, byTurn, clock, midnight), ...checkPegs(pieces, inSession, clock, midnight), ...ragPegs(state, clock)]
+  const leave: DayPeg[] = closesAt === null ? [] : [{ key: 'leave', at: Math.max(now, closesAt - hour / 4), title: boardWords.leave, says: state.rags.length > 0 ? boardWords.ragsOut : boardWords.lids, urgent: false }]
+  const pegs = [...work, ...leave]
+  const toAt = Math.min(midnight, Math.max(closesAt ?? now + 3 * hour, ...pegs.map(each => each.at + hour / 4)))
+  const minutes = state.sessions.filter(each => each.startsAt < midnight).reduce((sum, each) => sum + minutesOf(membersOf(each, byTurn).filter(({ turn }) => turn.turn.status === 'waiting')), 0)
+  return { fromAt: now - hour / 4, toAt: Math.max(toAt, now + hour), note: dayNote(closesAt, minutes, clock), pegs }
+}

@@ -1,0 +1,60 @@
+import { filmsOf, standings } from '#shared/board'
+import type { Standing } from '#shared/board'
+import { dryness } from '#shared/dryness'
+import type { StudioState } from '#shared/schemas/piece-state'
+import type { Clock } from '#shared/time'
+import type { ReadPiece } from '#shared/verdict/piece'
+import type { VerdictKind } from '#shared/verdict/types'
+import { groupNames } from '#shared/words/group'
+import { sheetKeepOut, sheetWords } from '#shared/words/sheet'
+import { betterText, limitTexts, verdictReason, verdictTitle } from '#shared/words/verdict'
+
+/** Pieces alike at one place: one drawing, one verdict, and what goes with it, a line each. */
+export interface SheetCell { key: string, names: string, dry: number | null, kind: VerdictKind, title: string, lines: string[] }
+
+export interface SheetShelf { key: number, name: string, room: string, cells: SheetCell[] }
+
+export interface HandlingSheet { rooms: { id: number, name: string }[], shelves: SheetShelf[], keepOuts: { id: number, head: string, says: string }[] }
+
+/** Reasons that the verdict's own words, or a line of the page, say already. */
+const said = ['dry', 'grip wet', 'cut off']
+
+function linesOf({ verdict }: Standing, clock: Clock): string[] {
+  const reason = said.includes(verdict.reason.code) ? [] : [verdictReason(verdict.reason, clock)]
+  const better = betterText(verdict, clock)
+  return [...reason, ...better ? [better] : [], ...limitTexts(verdict.limits, clock)]
+}
+
+const stemOf = (name: string) => name.replace(/\s+\d+$/, '')
+
+/** One cell for all of a series that the same is said of, in the order in which the first of each stands. */
+function cellsOf(stood: readonly Standing[], clock: Clock): SheetCell[] {
+  const alike = new Map<string, { standing: Standing, lines: string[], names: string[], dry: (number | null)[] }>()
+  for (const standing of stood) {
+    const lines = linesOf(standing, clock)
+    const key = [stemOf(standing.name), standing.verdict.kind, standing.verdict.grip ?? '', ...lines].join(' | ')
+    const known = alike.get(key) ?? { standing, lines, names: [], dry: [] }
+    alike.set(key, { ...known, names: [...known.names, standing.name], dry: [...known.dry, dryness(filmsOf(standing), clock.now)] })
+  }
+  return [...alike].map(([key, { standing: { verdict }, lines, names, dry }]) => ({
+    key, names: groupNames(names), kind: verdict.kind, title: verdictTitle(verdict.kind, verdict.grip), lines,
+    dry: dry.reduce((least, each) => least === null || each === null ? null : Math.min(least, each)),
+  }))
+}
+
+/**
+ * What hands may do, shelf by shelf as they stand before the reader. Every shut room is named, whichever room is read.
+ * @param roomId only what stands in this room; null for all of them
+ */
+export function handlingSheet(state: StudioState, pieces: readonly ReadPiece[], clock: Clock, roomId: number | null): HandlingSheet {
+  const stood = standings(pieces)
+  const rooms = roomId === null ? state.rooms : state.rooms.filter(each => each.id === roomId)
+  const shelves = rooms.flatMap(room => state.places.filter(place => place.roomId === room.id)
+    .map((place): SheetShelf => ({ key: place.id, name: place.name, room: room.name, cells: cellsOf(stood.get(place.id) ?? [], clock) })))
+  const nowhere = roomId === null ? cellsOf(stood.get(0) ?? [], clock) : []
+  return {
+    rooms: state.rooms.map(({ id, name }) => ({ id, name })),
+    shelves: [...shelves, { key: 0, name: sheetWords.nowhere, room: '', cells: nowhere }].filter(each => each.cells.length > 0),
+    keepOuts: state.rooms.flatMap(room => room.keepOut ? [{ id: room.id, ...sheetKeepOut(room.name, room.keepOut.opensBy) }] : []),
+  }
+}

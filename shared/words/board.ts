@@ -1,0 +1,122 @@
+import { ago, clockTime, roughTime, span } from '#shared/time'
+import type { Clock } from '#shared/time'
+import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
+import type { Verdict } from '#shared/verdict/types'
+import { limitTexts, verdictReason, verdictTitle } from '#shared/words/verdict'
+import { lowerFirst } from '#shared/words/steps'
+
+export const boardWords = {
+  title: 'Board',
+  loading: 'Looking round the studio',
+  failed: 'The studio did not answer.',
+  stale: 'The studio does not answer. This is how it stood when it last did.',
+  noRooms: 'No rooms yet.',
+  noRoomsSays: 'Settings takes the first room and its shelves; then pieces can stand somewhere.',
+  toSettings: 'Set up rooms and places',
+  noPieces: 'Nothing stands here yet.',
+  noPiecesSays: 'Start a batch, or say what you put on: the pieces then stand on their shelves here.',
+  toStart: 'Start a batch',
+  noPlaces: 'No shelf, rail or clamps in this room yet.',
+  nowhere: 'Without a place',
+  nowhereSays: 'Nobody has said where these stand: ask first.',
+  keepOut: 'Keep out.',
+  today: 'Work for hands today',
+  nothingToday: 'Nothing more asks for hands today.',
+  leave: 'Before you leave',
+  rags: (room: string) => `Rags, ${room}`,
+  ragsAsk: 'where are they?',
+  ragsOut: 'rags dealt with?',
+  lids: 'lids, heater, glue pot?',
+  fold: 'Fold again',
+  folded: (count: number) => `${count} alike`,
+  unfold: 'Show them one by one',
+  fresh: 'See anew',
+} as const
+
+/** What the drawing means, for whoever stands before it for the first time. */
+export const legendWords = {
+  title: 'How to read it',
+  wet: 'wet',
+  drying: 'drying: the chalk rises',
+  dry: 'likely dry',
+  unknown: 'nobody knows',
+  free: 'a free place',
+  press: 'Press a piece for its drying strip.',
+} as const
+
+const percent = (share: number) => `${Math.round(share * 100)} %`
+
+/** "19.4 °C", "67 °F". */
+export function warmth(tempC: number, units: 'metric' | 'us'): string {
+  return units === 'us' ? `${Math.round(tempC * 9 / 5 + 32)} °F` : `${Math.round(tempC * 10) / 10} °C`
+}
+
+/** "19.4 °C, 61 %, read 12 min ago. Water-based coats dry at 0.78 of sheet speed." `speed` null where nothing water-based is drying. */
+export function airText(air: RoomState['air'], speed: number | null, units: 'metric' | 'us', now: number): string {
+  if (air === null) return 'Nobody has read the air here.'
+  const read = air.readAt === null ? 'nobody has read it: the studio’s usual air' : `read ${ago(air.readAt, now)}`
+  return [`${warmth(air.tempC, units)}, ${percent(air.rh)}, ${read}.`, ...speed === null ? [] : [speedText(speed)]].join(' ')
+}
+
+function speedText(speed: number): string {
+  if (speed <= 0.005) return 'Water-based coats stand still in it.'
+  return Math.abs(speed - 1) < 0.05 ? 'Water-based coats dry at sheet speed.' : `Water-based coats dry at ${speed.toFixed(2)} of sheet speed.`
+}
+
+/** Who opens a shut room. Never a time: none of ours may read as leave to enter. */
+export function keepOutText(opensBy: string | null): string {
+  return `${opensBy ?? 'A maker'} opens this room.`
+}
+
+const free: Partial<Record<string, string>> = { rail: 'hooks', hook: 'hooks', clamps: 'clamps' }
+
+/** "6 of 7 places", "2 of 4 hooks"; over its capacity too. */
+export function takenText({ kind, taken, capacity }: Pick<PlaceState, 'kind' | 'taken' | 'capacity'>): string {
+  return `${taken} of ${capacity} ${free[kind] ?? 'places'}`
+}
+
+/** Reasons that the drawing beside the words, or the room's own line, says already. */
+const shown = ['dry', 'grip wet', 'wet', 'keep out', 'held', 'cut off']
+
+/** A verdict as it stands under a swatch: "ask first: second varnish was due 14:00", "may be handled; do not stack before 18:00". */
+export function swatchText(verdict: Verdict, clock: Clock): string {
+  const title = verdictTitle(verdict.kind, verdict.grip)
+  const unpromised = verdict.reason.code === 'wet' && verdict.reason.reason !== null
+  const head = shown.includes(verdict.reason.code) && !unpromised ? title : `${title}: ${verdictReason(verdict.reason, clock)}`
+  return [head, ...limitTexts(verdict.limits, clock)].join('; ')
+}
+
+/** "Ledger 5 spine" for a part of it that stands apart; "Ledger 5, 3 parts" for several that do. */
+export function standingName(piece: string, parts: readonly string[]): string {
+  const [first] = parts
+  if (first === undefined) return piece
+  return parts.length === 1 ? `${piece} ${lowerFirst(first)}` : `${piece}, ${parts.length} parts`
+}
+
+/** "until 17:30; 2 h 10 min of work". */
+export function dayNote(closesAt: number | null, minutes: number, clock: Clock): string {
+  const said = [...closesAt === null ? [] : [`until ${clockTime(closesAt, clock)}`], ...minutes === 0 ? [] : [`${span(minutes)} of work`]]
+  return said.join('; ')
+}
+
+export const dueSince = (at: number, clock: Clock) => `due since ${clockTime(at, clock)}`
+
+/** "start by 14:35 to do both", on a peg whose title says what. */
+export function startByText(at: number, size: number, clock: Clock): string {
+  const all = size === 1 ? '' : size === 2 ? ' to do both' : ` to do all ${size}`
+  return at < clock.now ? `late: was to start by ${clockTime(at, clock)}${all}` : `start by ${roughTime(at, clock, 'down')}${all}`
+}
+
+/** The sheet that a press on a piece opens. */
+export const pieceSheetWords = {
+  strip: 'How it dries',
+  next: 'Next',
+  why: 'Why',
+  limits: 'Not yet',
+  steps: 'What comes next',
+  parts: 'Part by part',
+  whole: 'Everything about this piece',
+  bare: 'Nothing on it that still changes.',
+  where: (place: string, room: string) => `${place}, ${room}`,
+  done: (done: number, of: number) => `${done} of ${of} steps done`,
+} as const
