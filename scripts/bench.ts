@@ -1,9 +1,10 @@
 import { cpus } from 'node:os'
+import { benchBoard } from './bench/board'
 import { benchPlanner } from './bench/planner'
 import { benchPredict } from './bench/predict'
 import { benchVapour } from './bench/vapour'
 
-const benches: Record<string, () => string[] | Promise<string[]>> = { planner: benchPlanner, predict: benchPredict, vapour: benchVapour }
+const benches: Record<string, () => string[] | Promise<string[]>> = { board: benchBoard, planner: benchPlanner, predict: benchPredict, vapour: benchVapour }
 
 const usage = `npm run bench [-- NAME ...]
 

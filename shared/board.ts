@@ -6,16 +6,16 @@ import { aboutToShutMs } from '#shared/verdict/begin'
 import type { ReadGroup, ReadPiece } from '#shared/verdict/piece'
 import type { Verdict } from '#shared/verdict/types'
 import { groupVerdict } from '#shared/verdict/verdict'
-import { airText, keepOutText, standingName, swatchText, takenText } from '#shared/words/board'
+import { airText, keepOutText, partsSuffix, swatchText, takenText } from '#shared/words/board'
 import { groupNames } from '#shared/words/group'
 import { momentText } from '#shared/words/moments'
 import { betterText } from '#shared/words/verdict'
 
 /** What stands of one piece at one place: its groups there, with the verdict on them. Loose parts of a piece lie together. */
-export interface Standing { piece: ReadPiece, groups: ReadGroup[], verdict: Verdict, name: string, whole: boolean }
+export interface Standing { piece: ReadPiece, groups: ReadGroup[], verdict: Verdict, name: string, suffix: string, whole: boolean }
 
 /** A swatch of the drawing: a piece, or several alike beside one another drawn once. */
-export interface BoardCell extends StandingPiece { pieceIds: number[], count: number, clamps: number }
+export interface BoardCell extends StandingPiece { pieceIds: number[], count: number, clamps: number, pieceName: string, suffix: string }
 
 export interface BoardPlace { id: number, name: string, kind: string, drawn: 'shelf' | 'rail' | 'clamps', note: string, free: number, cells: BoardCell[], unfolded: boolean }
 
@@ -38,9 +38,9 @@ export function standings(pieces: readonly ReadPiece[]): Map<number, Standing[]>
     if (piece.groups.length === 0) byPlace.set(0, [])
     for (const [placeId, groups] of byPlace) {
       const whole = byPlace.size === 1
-      const name = whole ? piece.piece.name : standingName(piece.piece.name, groups.map(({ group }) => group.parts[0]?.name ?? ''))
+      const suffix = whole ? '' : partsSuffix(groups.flatMap(({ group }) => group.parts.map(part => part.name)))
       const verdict = whole ? piece.verdict : groupVerdict(groups.map(each => each.verdict)) ?? piece.verdict
-      found.set(placeId, [...found.get(placeId) ?? [], { piece, groups, verdict, name, whole }])
+      found.set(placeId, [...found.get(placeId) ?? [], { piece, groups, verdict, name: piece.piece.name, suffix, whole }])
     }
   }
   return found
@@ -58,9 +58,9 @@ function momentOf({ piece, verdict, whole }: Standing, clock: Clock): Pick<Stand
 
 /** One swatch for what stands of a piece at a place. */
 export function standingCell(standing: Standing, clock: Clock): BoardCell {
-  const { piece, verdict, name } = standing
+  const { piece, verdict, name, suffix } = standing
   return {
-    key: piece.piece.id, name, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock),
+    key: piece.piece.id, name: name + suffix, pieceName: name, suffix, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock),
     ...momentOf(standing, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
   }
 }
@@ -70,7 +70,7 @@ const tenth = (dry: number | null) => dry === null ? null : Math.round(dry * 10)
 
 /** Whether two swatches beside one another say the same of two pieces of one series. */
 function isAlike(a: BoardCell, b: BoardCell): boolean {
-  return nameStem(a.name) === nameStem(b.name) && a.kind === b.kind && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone && tenth(a.dry) === tenth(b.dry)
+  return nameStem(a.pieceName) === nameStem(b.pieceName) && a.suffix === b.suffix && a.kind === b.kind && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone && tenth(a.dry) === tenth(b.dry)
 }
 
 const wetter = (a: number | null, b: number | null) => a === null || b === null ? null : Math.min(a, b)
@@ -86,7 +86,7 @@ export function foldCells(cells: readonly BoardCell[]): BoardCell[] {
   return runs.flatMap((run) => {
     const [first] = run
     if (first === undefined || run.length === 1) return run
-    return [{ ...first, name: groupNames(run.map(each => each.name)), dry: run.map(each => each.dry).reduce(wetter), pieceIds: run.flatMap(each => each.pieceIds), count: run.length, clamps: run.reduce((sum, each) => sum + each.clamps, 0) }]
+    return [{ ...first, name: groupNames(run.map(each => each.pieceName)) + first.suffix, dry: run.map(each => each.dry).reduce(wetter), pieceIds: run.flatMap(each => each.pieceIds), count: run.length, clamps: run.reduce((sum, each) => sum + each.clamps, 0) }]
   })
 }
 
@@ -110,7 +110,7 @@ export function drawBoard(state: StudioState, pieces: readonly ReadPiece[], cloc
   const many = [...stood.values()].reduce((sum, each) => sum + each.length, 0) >= foldFrom.studio
   const place = (row: PlaceState): BoardPlace => {
     const cells = (stood.get(row.id) ?? []).map(standing => standingCell(standing, clock))
-    const folds = (many || cells.length > foldFrom.place)
+    const folds = many || cells.length > foldFrom.place
     const drawn = folds && !unfolded.has(row.id) ? foldCells(cells) : cells
     return { id: row.id, name: row.name, kind: row.kind, drawn: drawnAs(row.kind), note: takenText(row), free: Math.max(0, row.capacity - row.taken), cells: drawn, unfolded: folds && unfolded.has(row.id) && foldCells(cells).length < cells.length }
   }

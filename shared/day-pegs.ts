@@ -1,10 +1,10 @@
 import type { SessionState, StudioState } from '#shared/schemas/piece-state'
 import type { DayPeg } from '#shared/shelf'
-import { clockTime, fromLocal, addDays, localDate, span } from '#shared/time'
+import { addDays, clockTime, fromLocal, localDate, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { aboutToShutMs } from '#shared/verdict/begin'
 import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
-import { boardWords, dayNote, dueSince, startByText } from '#shared/words/board'
+import { boardWords, dayNote, dueSince, morePegs, startByText } from '#shared/words/board'
 import { groupNames } from '#shared/words/group'
 import { stepNoun } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
@@ -33,19 +33,36 @@ function plainly(at: number, members: readonly Member[], clock: Clock): { says: 
 }
 
 function sessionPegs(state: StudioState, byTurn: ReadonlyMap<number, Member>, clock: Clock, until: number): DayPeg[] {
-  return state.sessions.flatMap((session): DayPeg[] => {
+  const works = state.sessions.flatMap((session): Work[] => {
     const members = membersOf(session, byTurn).filter(({ turn }) => turn.turn.status === 'waiting')
     const first = members[0]
     if (!first || session.startsAt >= until) return []
     const { step } = first.turn.turn
     const pressed = session.lastStartAt !== null && session.lastStartAt < until
-    return [{
-      key: `session ${session.id}`, at: Math.max(session.startsAt, clock.now),
-      title: `${asSentence(stepNoun(step.kind, step.name)).slice(0, -1)}, ${groupNames(members.map(({ piece }) => piece.piece.name))}`,
+    return [{ key: `${step.kind} ${stepNoun(step.kind, step.name)} ${pressed ? session.id : ''}`, session, members, pressed }]
+  })
+  return [...alike(works)].map(([key, { session, members, pressed }]): DayPeg => {
+    const { step } = members[0]!.turn.turn
+    return {
+      key, at: Math.max(session.startsAt, clock.now), title: titled(stepNoun(step.kind, step.name), members.map(({ piece }) => piece.piece.name)),
       ...pressed ? lastStart(session, members.length, clock) : plainly(session.startsAt, members, clock),
-    }]
+    }
   })
 }
+
+interface Work { key: string, session: SessionState, members: Member[], pressed: boolean }
+
+/** Sessions of the day that do the same, under the first of them; one that a window presses stands alone. */
+function alike(works: readonly Work[]): Map<string, Work> {
+  const found = new Map<string, Work>()
+  for (const work of works) {
+    const known = found.get(work.key)
+    found.set(work.key, known ? { ...known, members: [...known.members, ...work.members] } : work)
+  }
+  return found
+}
+
+const titled = (what: string, names: readonly string[]) => `${asSentence(what).slice(0, -1)}, ${groupNames(names)}`
 
 function lastStart(session: SessionState, size: number, clock: Clock): { says: string, urgent: boolean } {
   const at = session.lastStartAt ?? session.startsAt
@@ -59,13 +76,12 @@ function checkPegs(pieces: readonly ReadPiece[], inSession: ReadonlySet<number>,
     for (const { turn } of piece.turns) {
       if (turn.kind === 'work' || turn.wantedAt === null || turn.wantedAt >= until || inSession.has(turn.turnId)) continue
       const what = turn.name || turn.step.name
-      const key = `${what} ${Math.round(turn.wantedAt / (hour / 4))}`
-      const known = groups.get(key) ?? { at: turn.wantedAt, what, names: [], minutes: 0 }
-      groups.set(key, { at: Math.max(known.at, turn.wantedAt), what, names: [...known.names, piece.piece.name], minutes: known.minutes + turn.pieceMin })
+      const known = groups.get(what) ?? { at: turn.wantedAt, what, names: [], minutes: 0 }
+      groups.set(what, { at: Math.min(known.at, turn.wantedAt), what, names: [...known.names, piece.piece.name], minutes: known.minutes + turn.pieceMin })
     }
   }
   return [...groups].map(([key, { at, what, names, minutes }]) => ({
-    key: `check ${key}`, at: Math.max(at, clock.now), title: `${asSentence(what).slice(0, -1)}, ${groupNames(names)}`, urgent: false,
+    key: `check ${key}`, at: Math.max(at, clock.now), title: titled(what, names), urgent: false,
     says: [at <= clock.now ? dueSince(at, clock) : clockTime(at, clock), ...minutes > 0 ? [span(minutes)] : []].join(', '),
   }))
 }
@@ -75,6 +91,16 @@ function ragPegs(state: StudioState, clock: Clock): DayPeg[] {
     .map(each => ({ key: `rags ${each.id}`, at: clock.now, title: boardWords.rags(each.room), says: boardWords.ragsAsk, urgent: true }))
 }
 
+/** The ruler holds so many; what presses and what comes first have the places, the rest shares one. */
+const mostPegs = 8
+
+function fewest(pegs: readonly DayPeg[]): DayPeg[] {
+  if (pegs.length <= mostPegs) return [...pegs]
+  const ordered = [...pegs].sort((a, b) => Number(b.urgent) - Number(a.urgent) || a.at - b.at)
+  const rest = ordered.slice(mostPegs - 1)
+  return [...ordered.slice(0, mostPegs - 1), { key: 'more', at: Math.min(...rest.map(each => each.at)), urgent: false, ...morePegs(rest.length) }]
+}
+
 /** What needs hands today, from the plan's sessions, checks, rags and the end of the day. */
 export function dayPlan(state: StudioState, pieces: readonly ReadPiece[], clock: Clock): DayPlan {
   const { now, zone } = clock
@@ -82,7 +108,7 @@ export function dayPlan(state: StudioState, pieces: readonly ReadPiece[], clock:
   const closesAt = state.hours.filter(each => each.closesAt > now).at(-1)?.closesAt ?? null
   const byTurn = new Map(pieces.flatMap(piece => piece.turns.map((turn): [number, Member] => [turn.turn.turnId, { piece, turn }])))
   const inSession = new Set(state.sessions.flatMap(session => session.turnIds))
-  const work = [...sessionPegs(state, byTurn, clock, midnight), ...checkPegs(pieces, inSession, clock, midnight), ...ragPegs(state, clock)]
+  const work = fewest([...ragPegs(state, clock), ...sessionPegs(state, byTurn, clock, midnight), ...checkPegs(pieces, inSession, clock, midnight)])
   const leave: DayPeg[] = closesAt === null ? [] : [{ key: 'leave', at: Math.max(now, closesAt - hour / 4), title: boardWords.leave, says: state.rags.length > 0 ? boardWords.ragsOut : boardWords.lids, urgent: false }]
   const pegs = [...work, ...leave]
   const toAt = Math.min(midnight, Math.max(closesAt ?? now + 3 * hour, ...pegs.map(each => each.at + hour / 4)))

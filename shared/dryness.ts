@@ -10,7 +10,7 @@ const dryRung = (film: FilmState): MilestoneName => film.kind === 'glue-up' ? 'o
 /** The rungs of a film up to the one at which it is drawn dry; none when nobody knows its times. */
 function rungsToDry(film: FilmState): MilestonePrediction[] {
   const wanted = milestoneNames.indexOf(dryRung(film))
-  const last = film.milestones.findIndex(each => milestoneNames.indexOf(each.name) >= wanted)
+  const last = film.milestones.findIndex(each => milestoneNames.findIndex(name => name === each.name) >= wanted)
   return film.milestones.slice(0, last + 1)
 }
 

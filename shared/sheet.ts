@@ -32,12 +32,12 @@ function cellsOf(stood: readonly Standing[], clock: Clock): SheetCell[] {
   const alike = new Map<string, { standing: Standing, lines: string[], names: string[], dry: (number | null)[] }>()
   for (const standing of stood) {
     const lines = linesOf(standing, clock)
-    const key = [stemOf(standing.name), standing.verdict.kind, standing.verdict.grip ?? '', ...lines].join(' | ')
+    const key = [stemOf(standing.name), standing.suffix, standing.verdict.kind, standing.verdict.grip ?? '', ...lines].join(' | ')
     const known = alike.get(key) ?? { standing, lines, names: [], dry: [] }
     alike.set(key, { ...known, names: [...known.names, standing.name], dry: [...known.dry, dryness(filmsOf(standing), clock.now)] })
   }
-  return [...alike].map(([key, { standing: { verdict }, lines, names, dry }]) => ({
-    key, names: groupNames(names), kind: verdict.kind, title: verdictTitle(verdict.kind, verdict.grip), lines,
+  return [...alike].map(([key, { standing: { verdict, suffix }, lines, names, dry }]) => ({
+    key, names: groupNames(names) + suffix, kind: verdict.kind, title: verdictTitle(verdict.kind, verdict.grip), lines,
     dry: dry.reduce((least, each) => least === null || each === null ? null : Math.min(least, each)),
   }))
 }

@@ -48,25 +48,18 @@ export function pieceStates(db: Reader, studioId: number, pieceIds: readonly num
 interface PieceFilm { pieceId: number, stepId: number | null, state: FilmState }
 
 function filmStates(rows: PieceRows['films']): PieceFilm[] {
-  const targets = by(rows.targets, row => row.coatId)
-  const milestones = by(rows.milestones, row => row.coatId)
-  const windows = by(rows.windows, row => row.coatId)
-  const doubts = by(rows.doubts, row => row.coatId)
-  return rows.coats.map((row): PieceFilm => {
-    const on = targets.get(row.id) ?? []
-    return {
-      pieceId: row.pieceId, stepId: row.stepId,
-      state: {
-        coatId: row.id, actId: row.actId, kind: row.materialKind === 'size' ? 'size' : row.kind, step: row.step, material: row.material, materialVersionId: row.versionId,
-        solventBorne: row.solvent !== null && !['water', 'none'].includes(row.solvent), mustLieLevel: row.mustLieLevel ?? false, glovesUntil: row.glovesUntil,
-        partIds: [...new Set(on.map(each => each.partId))], faces: on.flatMap(each => each.face ?? []), layer: on.reduce((top, each) => Math.max(top, each.layer), 1),
-        beganAt: row.beganAt, endedAt: row.endedAt, hold: row.outAt === null ? row.hold : null,
-        milestones: (milestones.get(row.id) ?? []).map(each => ({ name: each.milestone, likelyAt: each.likelyAt, p90At: each.p90At, p98At: each.p98At, reachedAt: each.reachedAt, reason: each.reason })),
-        windows: (windows.get(row.id) ?? []).map(each => ({ opensAt: each.opensAt, shutsAt: each.shutsAt })),
-        doubts: (doubts.get(row.id) ?? []).map(each => ({ cause: each.cause, fromAt: each.fromAt })),
-      },
-    }
-  })
+  return rows.map((row): PieceFilm => ({
+    pieceId: row.pieceId, stepId: row.stepId,
+    state: {
+      coatId: row.id, actId: row.actId, kind: row.materialKind === 'size' ? 'size' : row.kind, step: row.step, material: row.material, materialVersionId: row.versionId,
+      solventBorne: row.solvent !== null && !['water', 'none'].includes(row.solvent), mustLieLevel: row.mustLieLevel === 1, glovesUntil: row.glovesUntil,
+      partIds: [...new Set(row.targets.map(([partId]) => partId))], faces: row.targets.flatMap(([, face]) => face ?? []), layer: row.targets.reduce((top, [, , layer]) => Math.max(top, layer), 1),
+      beganAt: row.beganAt, endedAt: row.endedAt, hold: row.outAt === null ? row.hold : null,
+      milestones: row.rungs.map(([name, likelyAt, p90At, p98At, reachedAt, reason]) => ({ name, likelyAt, p90At, p98At, reachedAt, reason })),
+      windows: row.windows.map(([opensAt, shutsAt]) => ({ opensAt, shutsAt })),
+      doubts: row.doubts.map(([cause, fromAt]) => ({ cause, fromAt })),
+    },
+  }))
 }
 
 /** Parts joined to one another, directly or through a third, stand and are judged as one. */
@@ -90,24 +83,20 @@ function groupsOf(parts: readonly PartRow[], films: readonly FilmState[]): Group
 interface PieceTurn { pieceId: number, state: TurnState }
 
 function turnStates(rows: PieceRows, films: readonly PieceFilm[], names: ReadonlyMap<number, string>): PieceTurn[] {
-  const { steps, turns, targets, sizes, links, before, entries } = rows.steps
+  const { steps, turns, targets, sizes, links, entries } = rows.steps
   const sizeOf = new Map(sizes.map(row => [row.sessionId, row.size]))
   const targetsOf = by(targets, row => row.stepId)
   const turnsOf = by(turns, row => row.stepId)
   const linksTo = by(links, row => row.toStepId)
-  const beforeById = new Map(before.map(row => [row.id, row]))
   const entryOf = new Map(entries.map(entry => [entry.turnId, entry]))
   const filmsOfStep = by(films, film => film.stepId)
   return steps.flatMap((row): PieceTurn[] => {
-    const all = turnsOf.get(row.step.id) ?? []
-    const own = newest(filmsOfStep.get(row.step.id))
-    const waits = (linksTo.get(row.step.id) ?? []).map((link): WaitState => {
-      const from = beforeById.get(link.fromStepId)
-      return waitOf(from?.name ?? '', from?.status ?? 'done', link, newest(filmsOfStep.get(link.fromStepId)))
-    })
-    const partIds = (targetsOf.get(row.step.id) ?? []).map(each => each.partId)
+    const all = turnsOf.get(row.id) ?? []
+    const own = newest(filmsOfStep.get(row.id))
+    const waits = (linksTo.get(row.id) ?? []).map((link): WaitState => waitOf(link.fromName, link.fromStatus, { ...link, windowed: link.windowed === 1 }, newest(filmsOfStep.get(link.fromStepId))))
+    const partIds = (targetsOf.get(row.id) ?? []).map(each => each.partId)
     return nextTurns(all).map(turn => ({
-      pieceId: row.step.pieceId,
+      pieceId: row.pieceId,
       state: turnState({ row, turn, all, waits: [...waits, ...ownWaits(row, turn, all, own)], film: own[0] ?? null, entry: entryOf.get(turn.id) ?? null, size: sizeOf.get(entryOf.get(turn.id)?.sessionId ?? null) ?? 1, partIds }, names),
     }))
   })
@@ -146,22 +135,21 @@ function rungAt(film: FilmState, name: MilestoneName) {
 /** The next coat of a round waits for the one before it, whatever the schedule's links say. */
 function ownWaits(row: StepRow, turn: TurnRow, all: readonly TurnRow[], films: readonly FilmState[]): WaitState[] {
   const again = turn.kind === 'work' && all.some(each => each.kind === 'work' && each.status === 'done')
-  return again ? [waitOf(row.step.name, 'resting', { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }, films)] : []
+  return again ? [waitOf(row.name, 'resting', { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }, films)] : []
 }
 
 interface TurnParts { row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, size: number, partIds: number[] }
 
-function turnState({ row, turn, all, waits, film, entry, size, partIds }: TurnParts, names: ReadonlyMap<number, string>): TurnState {
-  const { step } = row
-  const alike = all.filter(each => each.kind === turn.kind)
+function turnState({ row: step, turn, all, waits, film, entry, size, partIds }: TurnParts, names: ReadonlyMap<number, string>): TurnState {
+    const alike = all.filter(each => each.kind === turn.kind)
   return {
     turnId: turn.id, partIds, kind: turn.kind, name: turn.name, no: alike.indexOf(turn) + 1, of: alike.length, status: turn.status,
-    step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough, materialVersionId: step.materialVersionId, material: row.material, solventBorne: row.solvent !== null && !['water', 'none'].includes(row.solvent) },
+    step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough === 1, materialVersionId: step.materialVersionId, material: step.material, solventBorne: step.solvent !== null && !['water', 'none'].includes(step.solvent) },
     setupMin: step.setupMin, pieceMin: turn.kind === 'work' ? step.pieceMin : turn.minutes, cleanMin: step.cleanMin, dust: step.dust, notOnAt: turn.notOnAt,
     doing: turn.status === 'doing' ? { by: names.get(turn.doingMemberId ?? 0) ?? '', sinceAt: turn.beganAt ?? 0 } : null,
     wantedAt: wantedAt(turn, film),
     waits,
-    plan: entry && { startsAt: entry.startsAt, endsAt: entry.endsAt, dueAt: entry.dueAt, memberId: entry.memberId, sessionId: entry.sessionId, sessionSize: size, lastStartAt: entry.lastStartAt, firstFew: entry.firstFew, lastStartFewAt: entry.lastStartFewAt, afterTest: entry.afterTest },
+    plan: entry && { startsAt: entry.startsAt, endsAt: entry.endsAt, dueAt: entry.dueAt, memberId: entry.memberId, sessionId: entry.sessionId, sessionSize: size, lastStartAt: entry.lastStartAt, firstFew: entry.firstFew, lastStartFewAt: entry.lastStartFewAt, afterTest: entry.afterTest === 1 },
   }
 }
 

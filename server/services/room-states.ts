@@ -1,5 +1,5 @@
-import { and, asc, eq, isNull } from 'drizzle-orm'
-import { keepOut, part, piece, place, room, stay, studio } from '~~/db/schema'
+import { asc, eq, isNull, sql } from 'drizzle-orm'
+import { keepOut, place, room, studio } from '~~/db/schema'
 import { memberNames } from '~~/server/services/member-names'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
@@ -37,12 +37,11 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
 
 /** The places with how many size units stand there now. */
 export function placeStates(db: Reader, studioId: number): PlaceState[] {
-  // A piece takes its room on a place once, however many of its parts lie there.
-  const standing = db.selectDistinct({ placeId: stay.placeId, pieceId: piece.id, units: piece.sizeUnits }).from(stay)
-    .innerJoin(part, eq(part.id, stay.partId)).innerJoin(piece, and(eq(piece.id, part.pieceId), isNull(piece.goneAt)))
-    .where(scoped(stay, studioId, isNull(stay.toAt))).all()
-  const units = new Map<number, number>()
-  for (const row of standing) units.set(row.placeId, (units.get(row.placeId) ?? 0) + row.units)
+  // A piece takes its room on a place once, however many of its parts lie there. From the pieces on: stays of long ago are not walked.
+  const standing = db.all<{ placeId: number, units: number }>(sql`select placeId, sum(units) as units from (
+    select distinct stay.place_id as placeId, piece.id, piece.size_units as units from piece join part on part.piece_id = piece.id join stay on stay.part_id = part.id and stay.to_at is null
+    where piece.studio_id = ${studioId} and piece.gone_at is null) group by placeId`)
+  const units = new Map(standing.map(row => [row.placeId, row.units]))
   return db.select().from(place).where(scoped(place, studioId)).orderBy(asc(place.sort), asc(place.id)).all()
     .map(row => ({ id: row.id, roomId: row.roomId, name: row.name, kind: row.kind, capacity: row.capacity, taken: units.get(row.id) ?? 0 }))
 }

@@ -39,7 +39,7 @@ function hoursToday(db: Database, owner: StudioRow, now: number) {
 /** The sessions of the plan in force that still have something waiting, by the turns that pieces show. */
 function sessionStates(db: Database, studioId: number, pieces: readonly PieceState[]): SessionState[] {
   const rows = db.select({ session: planSession }).from(plan).innerJoin(planSession, eq(planSession.planId, plan.id))
-    .where(scoped(plan, studioId, sql`${plan.current} = 1`)).orderBy(asc(planSession.startsAt)).all().map(row => row.session)
+    .where(scoped(plan, studioId, sql`${plan.current} = 1`, eq(planSession.studioId, studioId))).orderBy(asc(planSession.startsAt)).all().map(row => row.session)
   const turns = new Map<number, { turnId: number, pieceId: number, lastStartAt: number | null, firstFew: number | null, lastStartFewAt: number | null }[]>()
   for (const piece of pieces) {
     for (const turn of piece.turns) {

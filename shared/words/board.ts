@@ -2,8 +2,9 @@ import { ago, clockTime, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
 import type { Verdict } from '#shared/verdict/types'
-import { limitTexts, verdictReason, verdictTitle } from '#shared/words/verdict'
+import { listText } from '#shared/words/group'
 import { lowerFirst } from '#shared/words/steps'
+import { verdictReason, verdictTitle } from '#shared/words/verdict'
 
 export const boardWords = {
   title: 'Board',
@@ -78,20 +79,30 @@ export function takenText({ kind, taken, capacity }: Pick<PlaceState, 'kind' | '
 /** Reasons that the drawing beside the words, or the room's own line, says already. */
 const shown = ['dry', 'grip wet', 'wet', 'keep out', 'held', 'cut off']
 
-/** A verdict as it stands under a swatch: "ask first: second varnish was due 14:00", "may be handled; do not stack before 18:00". */
+/** "do not stack, wrap or glaze yet": that there are limits; the sheet behind the press says till when. */
+function limitsInShort(limits: Verdict['limits']): string[] {
+  const verbs = limits.flatMap(({ kind }) => kind === 'gloves' ? [] : [kind])
+  const gloves = limits.length > verbs.length ? ['gloves'] : []
+  return verbs.length === 0 ? gloves : [...gloves, `do not ${listText(verbs).replace(' and ', ' or ')} yet`]
+}
+
+/** A verdict as it stands under a swatch: "ask first: second varnish was due 14:00", "may be handled; do not stack yet". */
 export function swatchText(verdict: Verdict, clock: Clock): string {
   const title = verdictTitle(verdict.kind, verdict.grip)
   const unpromised = verdict.reason.code === 'wet' && verdict.reason.reason !== null
   const head = shown.includes(verdict.reason.code) && !unpromised ? title : `${title}: ${verdictReason(verdict.reason, clock)}`
-  return [head, ...limitTexts(verdict.limits, clock)].join('; ')
+  return [head, ...limitsInShort(verdict.limits)].join('; ')
 }
 
-/** "Ledger 5 spine" for a part of it that stands apart; "Ledger 5, 3 parts" for several that do. */
-export function standingName(piece: string, parts: readonly string[]): string {
+/** ", spine" for a part that stands apart from its piece; ", 3 parts" for several that do. */
+export function partsSuffix(parts: readonly string[]): string {
   const [first] = parts
-  if (first === undefined) return piece
-  return parts.length === 1 ? `${piece} ${lowerFirst(first)}` : `${piece}, ${parts.length} parts`
+  if (first === undefined) return ''
+  return parts.length === 1 ? `, ${lowerFirst(first)}` : `, ${parts.length} parts`
 }
+
+/** The rest of the day's work, in one peg. */
+export const morePegs = (count: number) => ({ title: `${count} more`, says: 'Hands has them all' })
 
 /** "until 17:30; 2 h 10 min of work". */
 export function dayNote(closesAt: number | null, minutes: number, clock: Clock): string {

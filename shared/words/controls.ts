@@ -12,8 +12,6 @@ export const controlWords = {
   off: 'off',
   caution: 'Caution.',
   note: 'Note.',
-  free: 'free',
-  moreFree: 'more free',
   when: 'When',
   timeNow: 'now',
   timeAgo: 'ago',

@@ -26,4 +26,3 @@ export const sheetWords = {
 export function sheetKeepOut(room: string, opensBy: string | null): { head: string, says: string } {
   return { head: `${room}: keep out.`, says: `${opensBy ?? 'A maker'} opens it.` }
 }
-

@@ -1,0 +1,44 @@
+import { describe, expect, it } from 'vitest'
+import { dayPlan } from '#shared/day-pegs'
+import type { PieceState, TurnState } from '#shared/schemas/piece-state'
+import { at, clockAt, groupState, noon, pieceState, readAll, studioWith } from '../helpers/board'
+
+const clock = clockAt(noon)
+
+function turnState(turnId: number, partId: number, changes: Partial<TurnState> = {}): TurnState {
+  return {
+    turnId, partIds: [partId], kind: 'work', name: '', no: 1, of: 1, status: 'waiting',
+    step: { id: turnId, key: 'sand', name: 'Light sanding', kind: 'light sanding', origin: 'schedule', status: 'waiting', asideReason: null, hold: null, untilEnough: false, materialVersionId: null, material: null, solventBorne: false },
+    setupMin: 5, pieceMin: 10, cleanMin: 5, dust: 'some', notOnAt: null, doing: null, wantedAt: null, waits: [], plan: null, ...changes,
+  }
+}
+const withTurn = (id: number, changes: Partial<TurnState> = {}): PieceState => pieceState(id, `Ledger ${id}`, [groupState(id, 1)], { turns: [turnState(id, id, changes)] })
+const session = (id: number, startsAt: number, turnIds: number[], lastStartAt: number | null = null) => ({ id, family: 'f', startsAt, endsAt: startsAt + 1, lastStartAt, firstFew: null, lastStartFewAt: null, turnIds, pieceIds: turnIds })
+
+describe('the day ruler', () => {
+  it('pegs like work of the day once, under the first of it, and the end of the day', () => {
+    const state = studioWith([withTurn(1), withTurn(2), withTurn(3)], { sessions: [session(1, at(15), [1, 2]), session(2, at(16), [3])] })
+    const { pegs, note } = dayPlan(state, readAll(state, noon), clock)
+    // Set-up and clean-up 10 min once in the peg of three at 10 min each: 40 min. In the plan twice: 30 + 20 = 50 min.
+    expect(pegs.map(({ title, says }) => [title, says])).toEqual([['Light sanding, Ledgers 1–3', '15:00, 40 min'], ['Before you leave', 'lids, heater, glue pot?']])
+    expect(note).toBe('until 17:30; 50 min of work')
+  })
+  it('sets what a window presses apart, urgent within the hour', () => {
+    const state = studioWith([withTurn(1), withTurn(2)], { sessions: [session(1, at(12.25), [1, 2], at(12.75))] })
+    expect(dayPlan(state, readAll(state, noon), clock).pegs[0]).toMatchObject({ says: 'start by 12:45 to do both', urgent: true })
+  })
+  it('asks for rags half an hour after the last oil', () => {
+    const rags = (sinceAt: number) => studioWith([], { rags: [{ id: 1, roomId: 1, room: 'Front bench', sinceAt }] })
+    const titles = (sinceAt: number) => dayPlan(rags(sinceAt), [], clock).pegs.map(({ title, says }) => `${title}: ${says}`)
+    expect(titles(at(11.75))).toEqual(['Before you leave: rags dealt with?'])
+    expect(titles(at(11.5))).toEqual(['Rags, Front bench: where are they?', 'Before you leave: rags dealt with?'])
+  })
+  it('puts what does not fit into one peg', () => {
+    const pieces = Array.from({ length: 12 }, (_, i) => withTurn(i + 1, { kind: 'check', name: `Check ${i + 1}`, wantedAt: at(13 + i / 4) }))
+    const state = studioWith(pieces)
+    // Eight have room: seven and one for the other five, at the time of the eighth, 13:00 + 7 quarters.
+    const { pegs } = dayPlan(state, readAll(state, noon), clock)
+    expect(pegs).toHaveLength(9)
+    expect(pegs.find(({ key }) => key === 'more')).toMatchObject({ title: '5 more', at: at(14.75) })
+  })
+})
