@@ -39,11 +39,7 @@ function readParts(db: Reader, studioId: number, only: readonly number[] | null)
     where piece.studio_id = ${studioId} and piece.gone_at is null ${among(sql`piece.id`, only)} order by part.id`)
 }
 
-interface CoatRow {
-  id: number, pieceId: number, actId: number, kind: CoatKind, versionId: number | null, beganAt: number, endedAt: number, hold: Hold | null, outAt: number | null
-  material: string | null, materialKind: string | null, solvent: string | null, mustLieLevel: 0 | 1 | null, glovesUntil: MilestoneName | null, stepId: number | null, step: string | null
-  rungs: string, windows: string, targets: string, doubts: string
-}
+interface CoatRow { id: number, pieceId: number, actId: number, kind: CoatKind, versionId: number | null, beganAt: number, endedAt: number, hold: Hold | null, outAt: number | null, material: string | null, materialKind: string | null, solvent: string | null, mustLieLevel: 0 | 1 | null, glovesUntil: MilestoneName | null, stepId: number | null, step: string | null, rungs: string, windows: string, targets: string, doubts: string }
 type Rung = [name: MilestoneName, likelyAt: number | null, p90At: number | null, p98At: number | null, reachedAt: number | null, reason: ReasonCode | null]
 type Window = [opensAt: number | null, shutsAt: number | null]
 type Target = [partId: number, face: string | null, layer: number]
@@ -66,10 +62,7 @@ function readFilms(db: Reader, studioId: number, only: readonly number[] | null)
   return rows.map(row => ({ ...row, rungs: JSON.parse(row.rungs) as Rung[], windows: JSON.parse(row.windows) as Window[], targets: JSON.parse(row.targets) as Target[], doubts: JSON.parse(row.doubts) as Doubt[] }))
 }
 
-interface StepRow {
-  id: number, pieceId: number, key: string, name: string, kind: StepKind, origin: StepOrigin, status: StepStatus, asideReason: string | null, hold: Hold | null, untilEnough: 0 | 1, materialVersionId: number | null
-  setupMin: number, pieceMin: number, cleanMin: number, dust: DustClass, material: string | null, solvent: string | null
-}
+interface StepRow { id: number, pieceId: number, key: string, name: string, kind: StepKind, origin: StepOrigin, status: StepStatus, asideReason: string | null, hold: Hold | null, untilEnough: 0 | 1, materialVersionId: number | null, setupMin: number, pieceMin: number, cleanMin: number, dust: DustClass, material: string | null, solvent: string | null }
 interface TurnRow { id: number, stepId: number, ordinal: number, kind: TurnKind, name: string, checkAfterMin: number | null, minutes: number, status: TurnStatus, beganAt: number | null, doingMemberId: number | null, notOnAt: number | null }
 /** A link to the front with the step it comes from: its name, and whether it is done. */
 interface LinkRow { fromStepId: number, toStepId: number, milestone: MilestoneName | null, risk: Risk, windowed: 0 | 1, fromName: string, fromStatus: StepStatus }

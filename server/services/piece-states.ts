@@ -141,7 +141,7 @@ function ownWaits(row: StepRow, turn: TurnRow, all: readonly TurnRow[], films: r
 interface TurnParts { row: StepRow, turn: TurnRow, all: readonly TurnRow[], waits: WaitState[], film: FilmState | null, entry: PieceRows['steps']['entries'][number] | null, size: number, partIds: number[] }
 
 function turnState({ row: step, turn, all, waits, film, entry, size, partIds }: TurnParts, names: ReadonlyMap<number, string>): TurnState {
-    const alike = all.filter(each => each.kind === turn.kind)
+  const alike = all.filter(each => each.kind === turn.kind)
   return {
     turnId: turn.id, partIds, kind: turn.kind, name: turn.name, no: alike.indexOf(turn) + 1, of: alike.length, status: turn.status,
     step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough === 1, materialVersionId: step.materialVersionId, material: step.material, solventBorne: step.solvent !== null && !['water', 'none'].includes(step.solvent) },
