@@ -1,5 +1,5 @@
 import type { Browser, Page } from 'playwright-core'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import type { ScheduleWire } from '#shared/schemas/schedule'
 import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
 import { startServer } from '../helpers/server'
@@ -43,6 +43,8 @@ beforeAll(async () => {
   await owner.post('/api/places', { roomId: room.body.id, name: 'Hook', kind: 'hook', capacity: 1, sort: 1 })
   boxId = (await owner.get<ScheduleWire[]>('/api/schedules')).body.find(each => each.libraryKey === 'painted-waxed-box')?.id ?? 0
 })
+// A page left open goes on listening to the studio.
+afterEach(() => Promise.all(browser.contexts().map(context => context.close())))
 afterAll(async () => {
   await browser.close()
   await server.stop()
