@@ -1,13 +1,12 @@
 import { join } from 'node:path'
 import { importGuard } from './config/import-guard'
-import { plannerWorkerPlugin } from './config/planner-worker'
 import { security } from './config/security'
 
 export default defineNuxtConfig({
   compatibilityDate: '2026-05-01',
   telemetry: false,
   devtools: { enabled: false },
-  modules: ['@pinia/nuxt', '@nuxtjs/tailwindcss', 'nuxt-auth-utils', 'nuxt-security', '@nuxt/eslint', './config/service-worker'],
+  modules: ['@pinia/nuxt', '@nuxtjs/tailwindcss', 'nuxt-auth-utils', 'nuxt-security', '@nuxt/eslint', './config/service-worker', './config/planner-worker'],
   css: ['@fontsource/atkinson-hyperlegible/400.css', '@fontsource/atkinson-hyperlegible/700.css'],
   tailwindcss: { cssPath: '~/assets/css/tailwind.css', viewer: false, exposeConfig: false },
   // A component is called by its file name wherever it lies: components/base/BaseButton.vue is <BaseButton>.
@@ -26,9 +25,6 @@ export default defineNuxtConfig({
     compressPublicAssets: true,
     imports: { autoImport: false },
     serverAssets: [{ baseName: 'migrations', dir: '../db/migrations' }],
-  },
-  $production: {
-    nitro: { rollupConfig: { output: {}, plugins: [plannerWorkerPlugin(import.meta.dirname)] } },
   },
   vite: {
     plugins: [importGuard(import.meta.dirname)],

@@ -1,16 +1,35 @@
 import { join } from 'node:path'
-import type { Plugin } from 'rollup'
+import { defineNuxtModule } from '@nuxt/kit'
+import { build } from 'vite'
 
 /**
- * Nitro does not bundle what `new Worker(new URL(...))` names, so the worker is an entry of its own in the server's build, beside the server's:
- * `server/utils/planRunner.ts` starts it from there. Only for production (`$production.nitro.rollupConfig.plugins`): in development a second
- * entry breaks Nitro's bundle, and the runner plans in its own thread.
+ * Bundles `server/planner/worker.ts` by itself and lays it beside the built server, where `server/utils/planRunner.ts`
+ * starts it. Nitro does not bundle what `new Worker(new URL(...))` names; as a second entry of Nitro's own bundle it
+ * shared a chunk with the server, and every worker started the whole server once more. In development there is none:
+ * the runner plans in its own thread.
  */
-export function plannerWorkerPlugin(root: string): Plugin {
-  return {
-    name: 'stillwet:planner-worker',
-    buildStart() {
-      this.emitFile({ type: 'chunk', id: join(root, 'server/planner/worker.ts'), fileName: 'planner-worker.mjs' })
-    },
-  }
-}
+export default defineNuxtModule({
+  meta: { name: 'stillwet:planner-worker' },
+  setup(_options, nuxt) {
+    if (nuxt.options._prepare || nuxt.options.dev) return
+    nuxt.hook('nitro:init', (nitro) => {
+      nitro.hooks.hook('compiled', async () => {
+        await build({
+          configFile: false,
+          root: nuxt.options.rootDir,
+          logLevel: 'warn',
+          publicDir: false,
+          resolve: { alias: { '#shared': join(nuxt.options.rootDir, 'shared') } },
+          build: {
+            outDir: nitro.options.output.serverDir,
+            emptyOutDir: false,
+            minify: false,
+            target: 'node20',
+            rollupOptions: { external: [/^node:/] },
+            lib: { entry: join(nuxt.options.rootDir, 'server/planner/worker.ts'), formats: ['es'], fileName: () => 'planner-worker.mjs' },
+          },
+        })
+      })
+    })
+  },
+})
