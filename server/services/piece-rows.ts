@@ -52,8 +52,8 @@ type Doubt = [cause: DoubtCause, fromAt: number]
 function readFilms(db: Reader, studioId: number, only: readonly number[] | null) {
   const rows = db.all<CoatRow>(sql`select coat.id, coat.piece_id as pieceId, coat.act_id as actId, coat.kind, coat.material_version_id as versionId, coat.began_at as beganAt, coat.ended_at as endedAt, coat.hold, coat.out_at as outAt,
     material.name as material, version.kind as materialKind, version.solvent, version.must_lie_level as mustLieLevel, version.gloves_until as glovesUntil, turn.step_id as stepId, step.name as step,
-    (select json_group_array(json_array(milestone, likely_at, p90_at, p98_at, reached_at, reason)) from (select * from prediction where coat_id = coat.id order by ordinal)) as rungs,
-    (select json_group_array(json_array(opens_at, shuts_at)) from (select * from window_prediction where coat_id = coat.id order by ordinal)) as windows,
+    (select json_group_array(json_array(milestone, likely_at, p90_at, p98_at, reached_at, reason) order by ordinal) from prediction where coat_id = coat.id) as rungs,
+    (select json_group_array(json_array(opens_at, shuts_at) order by ordinal) from window_prediction where coat_id = coat.id) as windows,
     (select json_group_array(json_array(target.part_id, face.key, target.layer)) from coat_target target left join face on face.id = target.face_id where target.coat_id = coat.id) as targets,
     (select json_group_array(json_array(cause, from_at)) from doubt where doubt.coat_id = coat.id and doubt.cleared_act_id is null) as doubts
     from coat indexed by coat_live left join material_version version on version.id = coat.material_version_id left join material on material.id = version.material_id
@@ -81,7 +81,7 @@ function readSteps(db: Reader, studioId: number, only: readonly number[] | null)
     from ${from} join step_link link on link.to_step_id = step.id join piece_step earlier on earlier.id = link.from_step_id where ${front}`)
   const targets = db.all<{ stepId: number, partId: number }>(sql`select distinct target.step_id as stepId, target.part_id as partId from ${from} join step_target target on target.step_id = step.id where ${front}`)
   const entries = db.all<EntryRow>(sql`select entry.turn_id as turnId, entry.session_id as sessionId, entry.member_id as memberId, entry.starts_at as startsAt, entry.ends_at as endsAt, entry.due_at as dueAt, entry.last_start_at as lastStartAt, entry.first_few as firstFew, entry.last_start_few_at as lastStartFewAt, entry.after_test as afterTest
-    from plan join plan_entry entry on entry.plan_id = plan.id where plan.studio_id = ${studioId} and plan.current = 1 ${only ? among(sql`entry.turn_id`, turns.map(each => each.id)) : sql``}`)
+    from plan join plan_entry entry on entry.plan_id = plan.id where plan.studio_id = ${studioId} and plan.current = 1 and entry.turn_id in (select value from json_each(${JSON.stringify(turns.map(each => each.id))}))`)
   const sizes = db.all<{ sessionId: number | null, size: number }>(sql`select entry.session_id as sessionId, count(*) as size
     from plan join plan_entry entry on entry.plan_id = plan.id where plan.studio_id = ${studioId} and plan.current = 1 group by entry.session_id`)
   return { steps, turns, targets, sizes, links, entries }

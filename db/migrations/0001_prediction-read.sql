@@ -1,0 +1,1 @@
+CREATE INDEX `prediction_read` ON `prediction` (`coat_id`,`ordinal`,`milestone`,`likely_at`,`p90_at`,`p98_at`,`reached_at`,`reason`);
