@@ -39,7 +39,7 @@ export function useActs() {
    */
   async function correct(actId: number, change: { doneAt?: number, takeBack?: boolean, pieces?: number[] }): Promise<number> {
     const body = { clientKey: newClientKey(), ...change, ...change.doneAt === undefined ? {} : { doneAt: new Date(change.doneAt).toISOString() } }
-    const answer = await $fetch<{ actId: number }>(`/api/acts/${actId}/correct`, { method: 'POST', body })
+    const answer = await callApi<{ actId: number }>(`/api/acts/${actId}/correct`, { method: 'POST', body })
     await studio.load()
     return answer.actId
   }

@@ -1,3 +1,4 @@
+import type { SubscriptionWire } from '#shared/schemas/telling'
 import { FetchError } from 'ofetch'
 import { pushStates } from '#shared/words/call-settings'
 import { ServerRefusal, lookUp, subscribe, unsubscribe } from './push/steps'
@@ -13,10 +14,10 @@ async function ask<T>(call: Promise<T>): Promise<T> {
 }
 
 const server: PushServer = {
-  key: async () => (await ask($fetch('/api/push/key'))).publicKey,
-  list: () => ask($fetch('/api/push/subscriptions')),
-  save: subscription => ask($fetch('/api/push/subscriptions', { method: 'POST', body: { ...subscription, device: deviceName() } })),
-  end: id => ask($fetch(`/api/push/subscriptions/${id}`, { method: 'DELETE' })),
+  key: async () => (await ask(callApi<{ publicKey: string }>('/api/push/key'))).publicKey,
+  list: () => ask(callApi<SubscriptionWire[]>('/api/push/subscriptions')),
+  save: subscription => ask(callApi('/api/push/subscriptions', { method: 'POST', body: { ...subscription, device: deviceName() } })),
+  end: id => ask(callApi(`/api/push/subscriptions/${id}`, { method: 'DELETE' })),
 }
 
 function deviceName() {

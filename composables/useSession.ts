@@ -14,14 +14,14 @@ export function useSession() {
   }
 
   async function signOut() {
-    await $fetch('/api/auth/sign-out', { method: 'POST' })
+    await callApi('/api/auth/sign-out', { method: 'POST' })
     session.value = null
     await navigateTo('/sign-in')
   }
 
   /** Turns to another of one's studios; everything on the page belongs to the old one, so it is loaded anew. */
   async function turnTo(studioId: number) {
-    await $fetch('/api/auth/studio', { method: 'POST', body: { studioId } })
+    await callApi('/api/auth/studio', { method: 'POST', body: { studioId } })
     reloadNuxtApp({ path: '/', force: true })
   }
 

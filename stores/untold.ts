@@ -44,7 +44,7 @@ export const useUntoldStore = defineStore('untold', () => {
     if (!acts.value.some(each => each.clientKey === act.clientKey)) acts.value = [...acts.value, act]
     keep()
     try {
-      const { actId } = await $fetch('/api/acts', { method: 'POST', body: act })
+      const { actId } = await callApi<{ actId: number }>('/api/acts', { method: 'POST', body: act })
       drop(act)
       return { outcome: 'told', actId }
     }

@@ -32,11 +32,6 @@ export interface AirAt extends Air {
   hoursSinceReading: number | null
 }
 
-/** Reading of the air by a word: relative humidity 0..1 and the extra log sd such a word carries (a planning value). */
-export const airWords = {
-  dry: { rh: 0.35, doubt: 0.2 }, normal: { rh: 0.5, doubt: 0.2 }, damp: { rh: 0.7, doubt: 0.2 }, wet: { rh: 0.85, doubt: 0.2 },
-} as const
-
 function lerp(from: number, to: number, share: number): number {
   return from + (to - from) * share
 }

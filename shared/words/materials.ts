@@ -69,7 +69,6 @@ const names: Record<FigureName, string> = {
 export const figureName = (name: FigureName) => names[name]
 
 const keys: Record<SourceKey, string> = { 'S': 'read', 'S-': 'read, second hand', 'M': 'from memory, not checked', 'CP': 'common practice', 'calc': 'worked out', 'planning value': 'a planning value of ours', 'own': 'the studio’s own' }
-export const keyText = (key: SourceKey) => keys[key]
 
 /** "maker's data sheet, wood glue, seen (read)". */
 export const sourceText = ({ source, key }: { source: string, key: SourceKey }) => source === keys[key] || (key === 'planning value' && source === 'planning value') ? keys[key] : `${source} (${keys[key]})`

@@ -19,7 +19,7 @@ describe('when a batch may start', () => {
 })
 
 describe('the first window nobody works in', () => {
-  const step = (key: string): ScheduleStepWire => ({ key, name: key, kind: 'coat', material: null, hold: null, dust: 'none', parts: [], perDay: 1, days: 1, untilEnough: false, setupMin: 0, pieceMin: 60, cleanMin: 0, releaseMin: 0, hands: 1, checks: [], again: null, held: null, dry: null })
+  const step = (key: string): ScheduleStepWire => ({ key, name: key, kind: 'coat', material: null, hold: null, dust: 'none', parts: [], on: [], perDay: 1, days: 1, untilEnough: false, setupMin: 0, pieceMin: 60, cleanMin: 0, releaseMin: 0, hands: 1, checks: [], again: null, held: null, dry: null })
   const link: ScheduleLinkWire = { from: 'a', to: 'b', milestone: 'ready-to-recoat', risk: 'p90', windowed: true, wait: { likelyMin: 60, giveTillMin: 90, promised: true }, windows: [{ opensMin: 120, shutsMin: 300 }] }
   const schedule = { steps: [step('a'), step('b')], links: [link] }
 
