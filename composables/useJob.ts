@@ -3,7 +3,7 @@ import type { ComputedRef } from 'vue'
 import { actsOf, filmsOf } from '#shared/hands-acts'
 import type { ActChoice } from '#shared/hands-acts'
 import type { Job } from '#shared/hands'
-import { filmStrip, worstFilm } from '#shared/piece-strip'
+import { filmStrip, withFirstShut, worstFilm } from '#shared/piece-strip'
 import { mayDoStep } from '#shared/permissions'
 import { answeredAt } from '#shared/time'
 import type { TimeAnswer } from '#shared/time'
@@ -28,7 +28,7 @@ export function useJob(job: ComputedRef<Job>) {
   const films = computed(() => filmsOf(job.value.pieces).filter(film => job.value.kind !== 'release' || film.hold !== null))
   const film = computed(() => worstFilm(films.value, wanted.value))
   const moment = computed(() => jobMoment(job.value, film.value, studio.clock.value))
-  const strip = computed(() => (film.value && film.value.coatId > 0 ? filmStrip(film.value, wanted.value, job.value.turn, studio.now.value, studio.zone.value.name) : null))
+  const strip = computed(() => (film.value && film.value.coatId > 0 ? filmStrip(withFirstShut(film.value, films.value), wanted.value, job.value.turn, studio.now.value, studio.zone.value.name) : null))
   const where = computed(() => {
     const ids = new Set(job.value.pieces.flatMap(({ read, turn }) => read.piece.groups.filter(group => group.parts.some(part => turn.turn.partIds.includes(part.partId))).map(group => group.placeId)))
     return listText((studio.state.value?.places ?? []).filter(place => ids.has(place.id)).map(place => place.name))

@@ -11,6 +11,7 @@ export function useNavigation() {
     { to: '/schedules', label: shellWords.schedules },
     { to: '/materials', label: shellWords.materials },
     { to: '/air', label: shellWords.air },
+    { to: '/sheet', label: shellWords.sheet },
     { to: '/settings', label: shellWords.settings },
   ]
   const thumb: NavigationLink[] = [
@@ -21,7 +22,6 @@ export function useNavigation() {
   ]
   const more: NavigationLink[] = [
     { to: '/start', label: shellWords.startBatch },
-    { to: '/sheet', label: shellWords.sheet },
     ...top.filter(({ to }) => !thumb.some(link => link.to === to)),
   ]
   return { top, thumb, more }

@@ -33,6 +33,21 @@ const tickOf = (rung: MilestonePrediction) => {
 }
 
 /**
+ * A film that stands for several alike, with the window all of them can still keep: it shuts when the first of them shuts.
+ * @param films those it stands for, itself among them
+ */
+export function withFirstShut(film: FilmState, films: readonly FilmState[]): FilmState {
+  const alike = films.filter(each => each.step === film.step && each.material === film.material)
+  return {
+    ...film,
+    windows: film.windows.map((window, index) => {
+      const ends = alike.flatMap(each => each.windows[index]?.shutsAt ?? [])
+      return ends.length === 0 ? window : { ...window, shutsAt: Math.min(...ends) }
+    }),
+  }
+}
+
+/**
  * The drying strip of one film as it waits for a rung, with the window a next step asks for and what is planned.
  * @param now ms UTC
  * @param zone IANA name

@@ -96,8 +96,10 @@ export function jobMoment(job: Job, film: FilmState | null, clock: Clock): strin
   if (job.kind === 'check') return turn.wantedAt === null ? asSentence(beginReason(because)) : asSentence(turn.wantedAt <= clock.now ? `wanted since ${clockTime(turn.wantedAt, clock)}` : `wanted at ${clockTime(turn.wantedAt, clock)}`)
   if (job.due && turn.plan) return asSentence(`due since ${clockTime(turn.plan.dueAt, clock)}: is it on`).replace(/\.$/, '?')
   if (moment?.kind === 'start by') {
-    const why = momentReason(moment, clock)
-    return asSentence(why ? `${momentText(moment, clock)}; ${why}` : momentText(moment, clock))
+    // "To do both" of a session of two would puzzle beside the names of four pieces.
+    const start = moment.pieces?.all === job.pieces.length ? moment : { ...moment, pieces: null }
+    const why = momentReason(start, clock)
+    return asSentence(why ? `${momentText(start, clock)}; ${why}` : momentText(start, clock))
   }
   if (job.may) return asSentence(plannedText(job, clock) ?? 'may begin')
   if (moment && !job.may && because.code !== 'role') return asSentence(`${momentText(moment, clock)}; ${beginReason(because)}`)

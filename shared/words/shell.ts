@@ -14,6 +14,7 @@ export const shellWords = {
   air: 'Air',
   settings: 'Settings',
   putOn: 'Put on',
+  putOnLong: 'I put something on',
   sheet: 'Handling sheet',
   startBatch: 'Start a batch',
 } as const

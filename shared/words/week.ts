@@ -107,9 +107,12 @@ export function standingText(batch: BatchLoad): string {
   }
 }
 
+/** To the half day at the coarsest: a whole day would stand a day away from the lateness beside it. */
+const mostDoubt = 6 * 86_400_000
+
 /** "planned end Tue 8 Dec afternoon, date Sun 12:00": no finer than it is known. */
 export function datesText({ endsAt, dueAt }: BatchLoad, clock: Clock): string {
-  return [...endsAt === null ? [] : [`planned end ${roughTime(endsAt, clock, 'up')}`], ...dueAt === null ? [] : [`date ${clockTime(dueAt, clock)}`]].join(', ')
+  return [...endsAt === null ? [] : [`planned end ${roughTime(endsAt, clock, 'up', Math.min(Math.abs(endsAt - clock.now), mostDoubt))}`], ...dueAt === null ? [] : [`date ${clockTime(dueAt, clock)}`]].join(', ')
 }
 
 const shortDays = longDays.map(day => day.slice(0, 3))
