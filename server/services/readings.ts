@@ -47,6 +47,9 @@ function valuesOf(before: ReadingRow | undefined, request: ReadingRequest): Pick
   return malformed({ rh: fields.nothing })
 }
 
+/** Whether the studio has a room of this number. */
+export const hasRoom = (db: Database, studioId: number, roomId: number) => db.select({ id: room.id }).from(room).where(owned(room, studioId, roomId)).get() !== undefined
+
 /** Takes a reading back. One's own, or anybody's for a maker. */
 export function removeReading(db: Database, studioId: number, member: Membership, id: number, now: number): { ok: true } | Refusal {
   return change<{ ok: true } | Refusal>(db, studioId, 'air', (tx): { ok: true } | Refusal => {
@@ -60,7 +63,7 @@ export function removeReading(db: Database, studioId: number, member: Membership
   })
 }
 
-/** The newest readings of each room, newest first. */
+/** The newest readings of a room, newest first. */
 export function listReadings(db: Database, studioId: number, roomId: number, count: number) {
   const names = memberNames(db, studioId)
   return db.select().from(reading).where(scoped(reading, studioId, eq(reading.roomId, roomId))).orderBy(desc(reading.at)).limit(count).all()

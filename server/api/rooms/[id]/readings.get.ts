@@ -1,4 +1,5 @@
-import { listReadings } from '~~/server/services/readings'
+import { hasRoom, listReadings } from '~~/server/services/readings'
+import { absent } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { idParams } from '#shared/schemas/common'
 import { toWire } from '#shared/schemas/wire'
@@ -9,5 +10,5 @@ const shown = 60
 export default defineStudioHandler({
   may: 'read the studio',
   params: idParams,
-  run: ({ db, studio, params }) => toWire(listReadings(db, studio.id, params.id, shown)),
+  run: ({ db, studio, params }) => hasRoom(db, studio.id, params.id) ? toWire(listReadings(db, studio.id, params.id, shown)) : absent(),
 })
