@@ -119,7 +119,7 @@ describe('a wall link', () => {
     await page.getByRole('button', { name: 'End it: Front bench' }).click()
     await page.getByRole('dialog').getByRole('button', { name: 'End it' }).click()
     await page.getByText(/ended/).waitFor()
-    expect((await fetch(`${server.origin}/api/state?wall=${token}`)).status).toBe(404)
+    await expect.poll(async () => (await fetch(`${server.origin}/api/state?wall=${token}`)).status, { timeout: 10_000 }).toBe(404)
   })
 })
 
