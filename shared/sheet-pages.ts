@@ -20,3 +20,26 @@ export function pagesOf(rows: readonly MeasuredRow[], height: number): number[][
   })
   return pages
 }
+
+/** So many cells of a shelf beside one another: `from` counts from the shelf's first cell. */
+export interface ShelfStretch<Shelf> { shelf: Shelf, from: number, cells: number }
+
+/**
+ * Shelves in lines of so many columns, in their own order. Short shelves stand side by side; a shelf that is wider than
+ * what is left of a line begins the next one, and a longer one than a whole line goes on beneath itself.
+ * @param columns of one line, at least 1
+ */
+export function shelfLines<Shelf extends { cells: readonly unknown[] }>(shelves: readonly Shelf[], columns: number): ShelfStretch<Shelf>[][] {
+  const lines: ShelfStretch<Shelf>[][] = []
+  let left = 0
+  for (const shelf of shelves) {
+    for (let from = 0; from < shelf.cells.length; from += columns) {
+      const cells = Math.min(columns, shelf.cells.length - from)
+      const line = cells <= left ? lines.at(-1) : undefined
+      if (line) line.push({ shelf, from, cells })
+      else lines.push([{ shelf, from, cells }])
+      left = (line ? left : columns) - cells
+    }
+  }
+  return lines
+}

@@ -3,7 +3,7 @@ import { drawBoard, roomColumns } from '#shared/board'
 import { dryness } from '#shared/dryness'
 import { pieceStrip } from '#shared/board-strip'
 import { handlingSheet } from '#shared/sheet'
-import { pagesOf } from '#shared/sheet-pages'
+import { pagesOf, shelfLines } from '#shared/sheet-pages'
 import { at, clockAt, filmState, groupState, noon, pieceState, readAll, studioWith } from '../helpers/board'
 
 const clock = clockAt(noon)
@@ -122,5 +122,15 @@ describe('the handling sheet', () => {
     const rows = [0, 300, 600].map(top => ({ top, height: 300 }))
     expect(pagesOf([...rows, { top: 900, height: 700 }], 650)).toEqual([[0, 1], [2], [3]])
     expect([pagesOf(rows, 900), pagesOf([], 900)]).toEqual([[[0, 1, 2]], []])
+  })
+
+  it('stands short shelves side by side, and lets a long one go on beneath itself', () => {
+    const shelf = (name: string, count: number) => ({ name, cells: Array.from({ length: count }, (_, cell) => cell) })
+    const lines = shelfLines([shelf('a', 1), shelf('b', 2), shelf('c', 6), shelf('d', 2)], 4)
+    // a and b leave one column, too few for c; c's last two leave room for d.
+    expect(lines.map(line => line.map(each => [each.shelf.name, each.from, each.cells]))).toEqual([
+      [['a', 0, 1], ['b', 0, 2]], [['c', 0, 4]], [['c', 4, 2], ['d', 0, 2]],
+    ])
+    expect(shelfLines([], 4)).toEqual([])
   })
 })
