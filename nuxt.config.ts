@@ -16,6 +16,8 @@ export default defineNuxtConfig({
   // The browser asks our own /api/auth/session; the module's client half would ask a second time.
   auth: { loadStrategy: 'none' },
   eslint: { config: { stylistic: true } },
+  // A page's script is fetched when a link to it is reached for, not when it comes into sight: a phone on the board needs the board.
+  experimental: { defaults: { nuxtLink: { prefetchOn: { visibility: false, interaction: true } } } },
   runtimeConfig: {
     // Filled from NUXT_SESSION_PASSWORD and NUXT_SESSION_COOKIE_SECURE, which the start script sets.
     session: { name: 'stillwet', password: '', maxAge: 60 * 60 * 24 * 60, cookie: { sameSite: 'lax', secure: true, httpOnly: true } },
