@@ -7,10 +7,13 @@ const resolve = { alias: { '#shared': root('./shared'), '~~': root('.'), '~': ro
 const pure = (name: string) => ({ resolve, test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, testTimeout: 20_000 } })
 const served = (name: string) => ({
   resolve,
-  test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, globalSetup: ['tests/helpers/build.ts'], fileParallelism: false, testTimeout: 60_000, hookTimeout: 120_000 },
+  test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, globalSetup: ['tests/helpers/build.ts'], fileParallelism: false, testTimeout: 60_000, hookTimeout: 120_000, retry: 1 },
 })
 
-/** Pure tests run at once; those with a server or a browser share one build and run file by file. */
+/**
+ * Pure tests run at once; those with a server or a browser share one build and run file by file, and may be tried twice:
+ * a page on a busy machine can miss its second, and one that misses it twice is broken.
+ */
 export default defineConfig({
   test: {
     reporters: ['default', './tests/helpers/tally-reporter.ts'],
