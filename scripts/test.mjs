@@ -15,11 +15,13 @@ const checks = [
   ['dead code', [node, 'node_modules/knip/bin/knip.js']],
 ]
 
-const tally = { passed: 0, failed: 0 }
+let passed = 0
+const failed = []
 execFileSync(node, ['node_modules/nuxt/bin/nuxt.mjs', 'prepare'], { stdio: 'ignore' })
 for (const [name, [command, ...args]] of checks) {
   const { status } = spawnSync(command, args, { stdio: 'inherit' })
-  tally[status === 0 ? 'passed' : 'failed'] += 1
+  if (status === 0) passed += 1
+  else failed.push(`check: ${name}`)
   console.log(`${name}: ${status === 0 ? 'passed' : 'failed'}`)
 }
 
@@ -28,17 +30,15 @@ function runTests(...projects) {
   rmSync(tallyFile, { force: true })
   const named = projects.flatMap(project => ['--project', project])
   const { status } = spawnSync(node, ['node_modules/vitest/vitest.mjs', 'run', ...named, ...process.argv.slice(2)], { stdio: 'inherit', env: { ...process.env, STILLWET_TALLY: tallyFile } })
-  let failed = 1
   try {
     const counted = JSON.parse(readFileSync(tallyFile, 'utf8'))
-    tally.passed += counted.passed
-    // A skipped test proves nothing, so it does not pass.
-    failed = counted.failed + counted.skipped
+    passed += counted.passed
+    failed.push(...counted.failed)
+    if (counted.failed.length === 0 && status !== 0) failed.push(`tests: the run of ${projects.join(', ')} ended with ${status}`)
   }
   catch {
-    console.error('The tests were not counted.')
+    failed.push(`tests: the run of ${projects.join(', ')} was not counted`)
   }
-  tally.failed += failed === 0 && status !== 0 ? 1 : failed
 }
 
 // Apart: the build that the served tests share takes the ground from under a page mounted by itself.
@@ -46,5 +46,7 @@ runTests('unit', 'outside', 'nuxt')
 runTests('api', 'browser')
 rmSync(folder, { recursive: true })
 
-console.log(`${tally.passed} passed, ${tally.failed} failed`)
-process.exit(tally.failed === 0 ? 0 : 1)
+// Last of all, because of a long log often only the end is kept.
+if (failed.length > 0) console.log(['Failed:', ...failed.map(name => `  ${name}`), ''].join('\n'))
+console.log(`${passed} passed, ${failed.length} failed`)
+process.exit(failed.length === 0 ? 0 : 1)
