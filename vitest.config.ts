@@ -10,6 +10,9 @@ const served = (name: string) => ({
   test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, globalSetup: ['tests/helpers/build.ts'], fileParallelism: false, testTimeout: 60_000, hookTimeout: 120_000, retry: 1 },
 })
 
+// `nuxt prepare`, the type check and every build empty .nuxt except for its cache; what a mounted page is read from must outlast them.
+const mounted = { domEnvironment: 'happy-dom' as const, overrides: { buildDir: '.nuxt/cache/mounted' } }
+
 /**
  * Pure tests run at once; those with a server or a browser share one build and run file by file, and may be tried twice:
  * a page on a busy machine can miss its second, and one that misses it twice is broken.
@@ -19,7 +22,7 @@ export default defineConfig({
     reporters: ['default', './tests/helpers/tally-reporter.ts'],
     projects: [
       pure('unit'), pure('outside'),
-      await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt', environmentOptions: { nuxt: { domEnvironment: 'happy-dom' } } } }),
+      await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt', environmentOptions: { nuxt: mounted } } }),
       served('api'), served('browser'),
     ],
   },

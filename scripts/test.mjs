@@ -41,7 +41,7 @@ function runTests(...projects) {
   }
 }
 
-// Apart: the build that the served tests share takes the ground from under a page mounted by itself.
+// Apart: a page in a real browser has to answer within a second, which it cannot beside two busy unit runs.
 runTests('unit', 'outside', 'nuxt')
 runTests('api', 'browser')
 rmSync(folder, { recursive: true })
