@@ -59,8 +59,27 @@ export type Actor = typeof actors[number]
 export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone'] as const
 export type ActKind = typeof actKinds[number]
 
-export const callKinds = ['last moment to start', 'ready', 'before you leave', 'rags'] as const
+export const callKinds = ['last moment to start', 'ready', 'before you leave', 'check the room', 'rags', 'vapour'] as const
 export type CallKind = typeof callKinds[number]
+
+/** Calls about fire: nobody can switch them off, and no quiet hour holds them. */
+export const fireCallKinds = ['rags', 'vapour'] as const satisfies readonly CallKind[]
+
+/** Old objects are asked about these once; what nobody has tested counts as there. */
+export const intakeQuestions = ['lead', 'green cloth', 'mould', 'metal coating'] as const
+export type IntakeQuestion = typeof intakeQuestions[number]
+
+/** Whether the exhaust runs when solvent work begins. */
+export const exhaustAnswers = ['running', 'none'] as const
+export type ExhaustAnswer = typeof exhaustAnswers[number]
+
+/** How a room's air is moved: what its mixing factor rests on. */
+export const airMoves = ['measured fan', 'fan and windows', 'windows only'] as const
+export type AirMove = typeof airMoves[number]
+
+/** What only an owner can state, in writing. */
+export const statementKinds = ['isocyanate'] as const
+export type StatementKind = typeof statementKinds[number]
 
 export const channels = ['push', 'mail'] as const
 export type Channel = typeof channels[number]

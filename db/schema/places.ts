@@ -3,7 +3,7 @@ import { check, index, integer, real, sqliteTable, text, unique, uniqueIndex } f
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
 import { member, studio } from './studio'
 import { placeKinds, readingSources } from '#shared/terms'
-import type { PlaceKind, ReadingSource } from '#shared/terms'
+import type { AirMove, PlaceKind, ReadingSource } from '#shared/terms'
 
 /** A room with air of its own. Unknown volume or exhaust is null and never lowers a caution. */
 export const room = sqliteTable('room', {
@@ -16,6 +16,9 @@ export const room = sqliteTable('room', {
   sprayArea: flag('spray_area').notNull().default(false),
   volumeM3: real('volume_m3'),
   exhaustM3H: real('exhaust_m3_h'),
+  /** Air changes an hour without the exhaust, and how that air is moved. */
+  airChangesPerHour: real('air_changes_per_hour'),
+  airMoves: text('air_moves').$type<AirMove>(),
   sleptIn: flag('slept_in').notNull().default(false),
   nightDropC: real('night_drop_c').notNull(),
 }, t => [

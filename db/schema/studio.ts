@@ -1,7 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
-import { roles, stepKinds } from '#shared/terms'
+import { fireCallKinds, roles, stepKinds } from '#shared/terms'
 import type { Role, StepKind } from '#shared/terms'
 
 /** A studio: the boundary that no row may cross. `revision` grows by one with every committed change. */
@@ -151,5 +151,5 @@ export const callChoice = sqliteTable('call_choice', {
 }, t => [
   uniqueIndex('call_choice_once').on(t.memberId, t.kind), within(t, t.memberId, member),
   // A fire call cannot be switched off, not even by a row written by hand.
-  check('call_choice_not_fire', sql`${t.kind} <> 'rags'`),
+  check('call_choice_not_fire', sql`${t.kind} not in (${sql.raw(fireCallKinds.map(kind => `'${kind}'`).join(', '))})`),
 ])

@@ -1,7 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
-import { actKinds, actors, airNoteKinds, coatKinds, coatSizes, doubtCauses, dustClasses, grounds, holds, milestoneNames, placeKinds, risks, roles, stepKinds, stepOrigins, stepStatuses, turnKinds, turnStatuses } from '#shared/terms'
-import type { ActKind, Actor, AirNoteKind, CoatKind, CoatSize, DoubtCause, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, Role, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
+import { actKinds, actors, airNoteKinds, coatKinds, coatSizes, doubtCauses, dustClasses, grounds, holds, intakeQuestions, milestoneNames, placeKinds, risks, roles, stepKinds, stepOrigins, stepStatuses, turnKinds, turnStatuses } from '#shared/terms'
+import type { ActKind, Actor, AirNoteKind, CoatKind, CoatSize, DoubtCause, DustClass, Ground, Hold, IntakeQuestion, MilestoneName, PlaceKind, Risk, Role, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
 import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { materialVersion, mix, tin } from './materials'
 import { carrier, place, room } from './places'
@@ -87,6 +87,8 @@ export const piece = sqliteTable('piece', {
   name: text('name').notNull(),
   ordinal: integer('ordinal').notNull(),
   sizeUnits: integer('size_units').notNull().default(1),
+  /** Surface that one coat all over covers, m2; null when nobody said. */
+  areaM2: real('area_m2'),
   version: integer('version').notNull().default(1),
   goneAt: instant('gone_at'),
   stepsDone: integer('steps_done').notNull().default(0),
@@ -245,6 +247,9 @@ export const coat = sqliteTable('coat', {
   size: text('size').$type<CoatSize>().notNull(),
   ground: text('ground').$type<Ground>().notNull(),
   forced: flag('forced').notNull().default(false),
+  /** Surface of this coat where it was said, m2, and thinner poured in for it, g. */
+  areaM2: real('area_m2'),
+  thinnerGrams: real('thinner_grams').notNull().default(0),
   hold: text('hold').$type<Hold>(),
   outAt: instant('out_at'),
   strippedAt: instant('stripped_at'),
@@ -369,11 +374,11 @@ export const intake = sqliteTable('intake', {
   id: id(),
   studioId: studioColumn(),
   pieceId: integer('piece_id').notNull(),
-  question: text('question').$type<'lead' | 'green cloth' | 'mould'>().notNull(),
+  question: text('question').$type<IntakeQuestion>().notNull(),
   answer: text('answer').$type<'open' | 'not tested' | 'tested, none' | 'tested, found'>().notNull().default('open'),
 }, t => [
   studioKey(t), within(t, t.pieceId, piece), unique().on(t.pieceId, t.question),
-  oneOf('intake_question', t.question, ['lead', 'green cloth', 'mould']), oneOf('intake_answer', t.answer, ['open', 'not tested', 'tested, none', 'tested, found']),
+  oneOf('intake_question', t.question, intakeQuestions), oneOf('intake_answer', t.answer, ['open', 'not tested', 'tested, none', 'tested, found']),
 ])
 
 export const attachment = sqliteTable('attachment', {

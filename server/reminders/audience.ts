@@ -2,6 +2,7 @@ import { and, eq, inArray, isNull } from 'drizzle-orm'
 import type { cause } from '~~/db/schema'
 import { act, callChoice, member, person, ragDuty, subscription } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
+import { fireCallKinds } from '#shared/terms'
 import type { CallKind, Channel, Role } from '#shared/terms'
 import type { Audience } from './types'
 
@@ -13,12 +14,13 @@ export interface Endpoint { channel: Channel, endpointId: number, memberId: numb
  * everybody, and nobody can choose otherwise.
  */
 export function audienceOf(kind: CallKind, repeat: number): Audience {
+  if (kind === 'vapour') return 'everybody'
   if (kind !== 'rags') return 'makers'
   return repeat === 0 ? 'makers and the one who did it' : 'everybody'
 }
 
 /** Whether a kind can be switched off by a member: fire calls cannot. */
-export const isSwitchable = (kind: CallKind) => kind !== 'rags'
+export const isSwitchable = (kind: CallKind) => !fireCallKinds.some(fire => fire === kind)
 
 /** Whether a member of this role gets a kind while they have not chosen: a helper only fire calls. */
 export const isOnByDefault = (kind: CallKind, role: Role) => role !== 'helper' || !isSwitchable(kind)

@@ -11,7 +11,7 @@ export const leaseMs = 5 * 60_000
 const atOnce = 20
 
 /** Calls whose loss costs more than hearing them twice: fire, and the last moment. */
-export const isUrgent = (kind: CallKind) => kind === 'rags' || kind === 'last moment to start'
+export const isUrgent = (kind: CallKind) => kind === 'rags' || kind === 'vapour' || kind === 'last moment to start'
 
 /**
  * Takes hold of the calls that are due, and of those whose holder is gone, in one transaction, and writes down

@@ -14,6 +14,7 @@ import { refold } from '~~/server/work/refold'
 import { readEdition } from '~~/server/work/schedule'
 import type { ScheduleEdition } from '~~/server/work/schedule'
 import type { BatchRequest } from '#shared/schemas/batch'
+import { intakeQuestions } from '#shared/terms'
 import { batchRefusals, wholePart } from '#shared/words/batch'
 
 export interface Started { ok: true, batchId: number, pieceIds: number[], repeated: boolean }
@@ -35,8 +36,8 @@ export function startBatch(db: Database, studioId: number, teller: Teller, reque
     const startsAt = Date.parse(request.startsAt)
     const actId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: 'batch started', doneAt: startsAt, toldAt: now, acting: actingOf(teller), body: { materials, placeId: request.placeId }, subjects: [] })
     const batchId = tx.insert(batch).values({ studioId, orderId: orderFor(tx, studioId, request), scheduleVersionId: version, name: request.name, actId, startsAt }).returning({ id: batch.id }).get().id
-    const pieceIds = request.pieces.map((name, index) => insertPiece(tx, studioId, { batchId, name, ordinal: index + 1, sizeUnits: request.sizeUnits }, edition, actId, startsAt))
-    if (request.oldObject) tx.insert(intake).values(pieceIds.flatMap(pieceId => (['lead', 'mould'] as const).map(question => ({ studioId, pieceId, question })))).run()
+    const pieceIds = request.pieces.map((name, index) => insertPiece(tx, studioId, { batchId, name, ordinal: index + 1, sizeUnits: request.sizeUnits, areaM2: request.areaM2 ?? null }, edition, actId, startsAt))
+    if (request.oldObject) tx.insert(intake).values(pieceIds.flatMap(pieceId => intakeQuestions.map(question => ({ studioId, pieceId, question })))).run()
     refold(tx, studioId, pieceIds)
     predictPieces(tx, studioId, pieceIds, now)
     return { ok: true, batchId, pieceIds, repeated: false }
@@ -99,7 +100,7 @@ function orderFor(tx: Transaction, studioId: number, request: BatchRequest): num
   return open.id
 }
 
-function insertPiece(tx: Transaction, studioId: number, given: { batchId: number, name: string, ordinal: number, sizeUnits: number }, edition: ScheduleEdition | null, actId: number, doneAt: number): number {
+function insertPiece(tx: Transaction, studioId: number, given: { batchId: number, name: string, ordinal: number, sizeUnits: number, areaM2: number | null }, edition: ScheduleEdition | null, actId: number, doneAt: number): number {
   const pieceId = tx.insert(piece).values({ studioId, ...given }).returning({ id: piece.id }).get().id
   for (const each of edition?.parts ?? [{ ...wholePart, grip: null, faces: [] }]) {
     const partId = tx.insert(part).values({ studioId, pieceId, key: each.key, name: each.name, grip: each.grip }).returning({ id: part.id }).get().id

@@ -20,7 +20,7 @@ export function listCallChoices(db: Database, studioId: number, { id: memberId, 
 }
 
 export function chooseCall(db: Database, studioId: number, memberId: number, kind: CallKind, wanted: boolean): { ok: true } | Refusal {
-  if (isFixed(kind)) return wanted ? { ok: true } : impossible(settings.ragsStay, { kind: settings.ragsStay })
+  if (isFixed(kind)) return wanted ? { ok: true } : impossible(settings.fireStays, { kind: settings.fireStays })
   db.insert(callChoice).values({ studioId, memberId, kind, wanted })
     .onConflictDoUpdate({ target: [callChoice.memberId, callChoice.kind], set: { wanted } }).run()
   return { ok: true }

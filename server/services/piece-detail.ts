@@ -14,6 +14,8 @@ import { foldPieces } from '~~/server/work/refold'
 import type { FoldedPiece } from '~~/server/work/refold'
 import type { LayerLine, PieceDetail } from '#shared/schemas/piece-detail'
 import type { CautionWire } from '#shared/schemas/schedule'
+import type { CautionKey } from '#shared/library/cautions'
+import type { IntakeQuestion } from '#shared/terms'
 
 /** One piece with all that was told of it and all that is to come; also one that has left the studio. `now` in ms UTC. */
 export function findPiece(db: Database, studioId: number, reader: Membership, pieceId: number, now: number): PieceDetail | Refusal {
@@ -68,12 +70,15 @@ function readReasons(db: Database, studioId: number, pieceId: number, now: numbe
   return predicted.map(({ coat: { id }, prediction }) => ({ coatId: id, rate: rates.find(each => each.coatId === id) ?? null, advice: prediction.advice.map(each => each.text) }))
 }
 
+/** What each question about an old object warns of while it is not answered with "tested, none". */
+const intakeCautions: Record<IntakeQuestion, CautionKey> = { 'lead': 'old paint', 'green cloth': 'green cloth', 'mould': 'mould', 'metal coating': 'metal coating' }
+
 /** Of the materials still to come and of those on it that have not settled. */
 function readCautions(db: Database, studioId: number, pieceId: number, intakes: PieceDetail['intakes']): CautionWire[] {
   const ahead = db.select({ versionId: pieceStep.materialVersionId }).from(pieceStep).where(scoped(pieceStep, studioId, eq(pieceStep.pieceId, pieceId), inArray(pieceStep.status, ['waiting', 'doing', 'resting', 'set aside']))).all()
   const on = db.select({ versionId: coat.materialVersionId }).from(coat).where(scoped(coat, studioId, eq(coat.pieceId, pieceId), isNull(coat.settledAt), isNull(coat.strippedAt))).all()
   const ids = [...new Set([...on, ...ahead].flatMap(each => each.versionId ?? []))]
   const rows = ids.length === 0 ? [] : db.select({ name: material.name, cautions: materialVersion.cautions }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId)).where(scoped(materialVersion, studioId, inArray(materialVersion.id, ids))).all()
-  const old = intakes.flatMap(({ question, answer }) => (answer === 'tested, none' ? [] : question === 'lead' ? ['old paint'] : question === 'green cloth' ? ['green cloth'] : []))
+  const old = intakes.flatMap(({ question, answer }) => (answer === 'tested, none' ? [] : [intakeCautions[question]]))
   return [...old.map(key => ({ key, materials: [] })), ...cautionsOf(rows)]
 }

@@ -3,6 +3,7 @@ import { coat, coatTarget, intake, keepOut, materialVersion, part, place, ragDut
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { predictPieces } from '~~/server/work/predict'
+import { intakeQuestions } from '#shared/terms'
 import type { ActKind } from '#shared/terms'
 
 interface Told { actId: number, kind: ActKind, body: Record<string, unknown>, pieceIds: number[], memberId: number | null, now: number }
@@ -15,8 +16,9 @@ export function afterAct(tx: Transaction, studioId: number, told: Told) {
 }
 
 function answerIntake(tx: Transaction, studioId: number, told: Told) {
-  const { question, answer } = told.body
-  if (question !== 'lead' && question !== 'green cloth' && question !== 'mould') return
+  const { answer } = told.body
+  const question = intakeQuestions.find(each => each === told.body.question)
+  if (!question) return
   if (answer !== 'not tested' && answer !== 'tested, none' && answer !== 'tested, found') return
   for (const pieceId of told.pieceIds) {
     tx.insert(intake).values({ studioId, pieceId, question, answer }).onConflictDoUpdate({ target: [intake.pieceId, intake.question], set: { answer } }).run()

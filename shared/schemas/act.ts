@@ -1,5 +1,5 @@
 import * as z from 'zod/mini'
-import { airNoteKinds, coatSizes, grounds, holds, milestoneNames } from '#shared/terms'
+import { airNoteKinds, coatSizes, exhaustAnswers, grounds, holds, intakeQuestions, milestoneNames } from '#shared/terms'
 
 const id = z.int().check(z.positive())
 const stepKey = z.string().check(z.minLength(1), z.maxLength(80))
@@ -20,6 +20,9 @@ const film = {
   name: z.optional(shortText),
   minutes: z.optional(z.number().check(z.gte(0), z.lte(600))),
   forced: z.optional(z.boolean()),
+  /** Surface of one piece of this coat, m2, and thinner poured in for one piece, g: what the air in the room is reckoned from. */
+  areaM2: z.optional(z.number().check(z.gt(0), z.lte(1000))),
+  thinnerGrams: z.optional(z.number().check(z.gte(0), z.lte(100_000))),
 }
 
 const placed = { placeId: z.optional(id), carrierId: z.optional(z.nullable(id)) }
@@ -46,7 +49,7 @@ export const actBodies = {
   'rejoined': z.object({}),
   'enough': z.object({ step: stepKey }),
   'air': z.object({ kind: z.enum(airNoteKinds), minutes: z.optional(z.nullable(z.int().check(z.gte(1), z.lte(10_080)))) }),
-  'intake answered': z.object({ question: z.enum(['lead', 'green cloth', 'mould']), answer: z.enum(['not tested', 'tested, none', 'tested, found']) }),
+  'intake answered': z.object({ question: z.enum(intakeQuestions), answer: z.enum(['not tested', 'tested, none', 'tested, found']) }),
   'gone': z.object({}),
 } as const
 export type TellableKind = keyof typeof actBodies
@@ -60,8 +63,12 @@ const subjects = {
 
 const kinds = Object.keys(actBodies) as [TellableKind, ...TellableKind[]]
 
+/** The three things asked before the first solvent step of a session in a room. */
+export const vapourAnswers = z.strictObject({ exhaust: z.enum(exhaustAnswers), flamesOff: z.boolean(), nobodyElse: z.boolean() })
+export type VapourAnswers = z.infer<typeof vapourAnswers>
+
 /** One tap, as it comes over the wire. The body is checked against its kind by `parseActBody`. */
-export const actRequest = z.object({ clientKey, kind: z.enum(kinds), doneAt: instant, ...subjects, body: z.record(z.string(), z.unknown()) })
+export const actRequest = z.object({ clientKey, kind: z.enum(kinds), doneAt: instant, ...subjects, body: z.record(z.string(), z.unknown()), vapour: z.optional(vapourAnswers) })
 export type ActRequest = z.infer<typeof actRequest>
 
 /** A correction: another time, other pieces, other words, or taking it back. What is not given stays. */

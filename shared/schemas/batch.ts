@@ -13,6 +13,8 @@ export const batchRequest = z.object({
   /** One name for each piece, in the order of the row. */
   pieces: z.array(name(fields.pieceName)).check(z.minLength(1, fields.pieces), z.maxLength(60, fields.pieces)),
   sizeUnits: z._default(z.int().check(z.gte(1, fields.size), z.lte(20, fields.size)), 1),
+  /** Surface of one piece that a coat all over covers, m2; null when nobody said: the air in the room is reckoned from it. */
+  areaM2: z.optional(z.nullable(z.number().check(z.gt(0, fields.area), z.lte(1000, fields.area)))),
   placeId: id,
   order: z.nullable(z.object({ name: name(fields.orderName), dueAt: z.nullable(instant) })),
   startsAt: instant,

@@ -1,6 +1,6 @@
 import type { RateWire } from '#shared/schemas/rate'
 import type { CautionWire } from '#shared/schemas/schedule'
-import type { ActKind, Actor, DoubtCause, Hold, StepKind, StepOrigin, StepStatus } from '#shared/terms'
+import type { ActKind, Actor, DoubtCause, Hold, IntakeQuestion, StepKind, StepOrigin, StepStatus } from '#shared/terms'
 import type { ActDetail } from '#shared/words/steps'
 import type { ProblemCode } from '#shared/work/types'
 
@@ -84,5 +84,5 @@ export interface PieceDetail {
   history: ActLine[]
   films: { coatId: number, rate: RateWire | null, advice: string[] }[]
   cautions: CautionWire[]
-  intakes: { question: 'lead' | 'green cloth' | 'mould', answer: 'open' | 'not tested' | 'tested, none' | 'tested, found' }[]
+  intakes: { question: IntakeQuestion, answer: 'open' | 'not tested' | 'tested, none' | 'tested, found' }[]
 }

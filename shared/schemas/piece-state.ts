@@ -1,5 +1,5 @@
 import type { MilestonePrediction, WindowPrediction } from '#shared/drying/types'
-import type { DoubtCause, Hold, MilestoneName, Risk, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
+import type { DoubtCause, Hold, IntakeQuestion, MilestoneName, Risk, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
 
 // One shape for every screen, feed and message. Instants are ms UTC here; `toWire` makes them ISO 8601 on the way out.
 
@@ -102,7 +102,7 @@ export interface PieceState {
   turns: TurnState[]
   stepsDone: number
   stepsOf: number
-  intake: 'lead' | 'green cloth' | 'mould' | null
+  intake: IntakeQuestion | null
 }
 
 export interface PlaceState { id: number, roomId: number, name: string, kind: string, capacity: number, taken: number }

@@ -1,8 +1,5 @@
+import type { AirMove } from '#shared/terms'
 import { positive, within } from '#shared/vapour/ranges'
-
-/** How a room's air is moved: what its mixing factor rests on. */
-export const airMoves = ['measured fan', 'fan and windows', 'windows only'] as const
-export type AirMove = typeof airMoves[number]
 
 /** Mixing factor of a way to move air, a planning value within the 1 to 10 that manuals give; nothing known counts as the worst. */
 export function mixingFactorOf(move: AirMove | null): number {

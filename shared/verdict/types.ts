@@ -1,4 +1,4 @@
-import type { DoubtCause, Hold } from '#shared/terms'
+import type { DoubtCause, Hold, IntakeQuestion } from '#shared/terms'
 import type { ReasonCode } from '#shared/drying/types'
 
 /** A rung as the verdict sees it. Times in ms UTC; `reachedAt` only from a maker or an owner. */
@@ -45,7 +45,7 @@ export interface PartFacts {
   place: { room: string, place: string } | null
   missing: { where: string, seenAt: number } | null
   /** Set while the question is open, or answered "not tested". */
-  intake: 'lead' | 'green cloth' | 'mould' | null
+  intake: IntakeQuestion | null
   /** Set while the room the part stands in has an open keep-out. */
   keepOut: { room: string } | null
 }
@@ -73,7 +73,7 @@ export type VerdictReason =
   | { code: 'no promise', reason: ReasonCode }
   | { code: 'coat due', at: number, what: string }
   | { code: 'not there', where: string | null, seenAt: number | null }
-  | { code: 'intake', question: 'lead' | 'green cloth' | 'mould' }
+  | { code: 'intake', question: IntakeQuestion }
   | { code: 'grip wet', grip: string }
   | { code: 'dry' }
   | { code: 'cut off', since: number }

@@ -4,6 +4,7 @@ export const fields = {
   pieceName: 'Give every piece a name of 1 to 60 characters.',
   pieces: 'A batch has 1 to 60 pieces.',
   size: 'A piece takes 1 to 20 size units of a shelf.',
+  area: 'The surface of a piece is more than 0 and at most 1000 m².',
   orderName: 'Give the order a name of 1 to 60 characters.',
 } as const
 

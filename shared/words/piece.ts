@@ -58,6 +58,8 @@ export const pieceWords = {
   lead: 'Was its paint tested for lead?',
   greenCloth: 'Was its green cloth or paper tested for arsenic?',
   mould: 'Was it looked over for mould?',
+  metalCoating: 'Is there an old metal coat, and was it tested?',
+  intakeTested: 'Tested means by somebody trained for it or a laboratory. A home kit does not count.',
   none: 'tested, none',
   found: 'tested, found',
   notTested: 'not tested',

@@ -21,6 +21,6 @@ export const settings = {
   placeInUse: (pieces: readonly string[]) => `These stand here now: ${list(pieces)}. Move them first.`,
   placeHasHistory: 'Pieces have stood here, and their history names this place. Rename it instead.',
   placeTooSmall: (needed: number) => `What stands here now takes up ${needed}. Move something first.`,
-  ragsStay: 'The call about oily rags cannot be switched off.',
+  fireStays: 'Calls about fire cannot be switched off.',
   ownAbsenceOnly: 'You may set your own days off. Ask an owner for those of the studio.',
 } as const

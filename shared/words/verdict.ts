@@ -60,6 +60,7 @@ const intakeHazards = {
   'lead': 'lead not ruled out',
   'green cloth': 'arsenic in green cloth not ruled out',
   'mould': 'mould not ruled out',
+  'metal coating': 'lead, chrome or cadmium in its metal coat not ruled out',
 }
 
 function notThereText(where: string | null, seenAt: number | null, clock: Clock): string {

@@ -94,6 +94,8 @@ function newCoat(draft: Draft, act: WorkAct, kind: CoatKind, step: Step, turn: T
     size: asSize(act.body.size) ?? step.coatSize,
     ground: asGround(act.body.ground) ?? step.ground,
     forced: act.body.forced === true,
+    areaM2: asNumber(act.body.areaM2),
+    thinnerGrams: asNumber(act.body.thinnerGrams) ?? 0,
     hold: null,
     outAt: null,
     strippedAt: null,

@@ -81,6 +81,9 @@ export interface FoldedCoat {
   size: CoatSize
   ground: Ground
   forced: boolean
+  /** Surface, m2, and thinner, g, where the teller said them. */
+  areaM2: number | null
+  thinnerGrams: number
   hold: Hold | null
   outAt: number | null
   strippedAt: number | null

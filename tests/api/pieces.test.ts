@@ -47,7 +47,7 @@ describe('GET /api/pieces/[id]', () => {
     expect(body.history[0]?.doneAt).toMatch(/^\d{4}-\d\d-\d\dT.*Z$/)
     expect(body.mates.map(mate => mate.name)).toEqual(['Box 1', 'Box 2'])
     expect(body.films[0]?.rate?.factor).toBeGreaterThan(0)
-    expect(body.intakes.map(each => each.question)).toEqual(['lead', 'mould'])
+    expect(body.intakes.map(each => each.question)).toEqual(['lead', 'green cloth', 'mould', 'metal coating'])
   })
 
   it('lets a helper read it and correct nothing of another', async () => {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { airAt, airHours } from '#shared/vapour/air'
-import { airMoves, closedAirChanges, mixingFactorOf, neededFlow } from '#shared/vapour/airflow'
+import { closedAirChanges, mixingFactorOf, neededFlow } from '#shared/vapour/airflow'
+import { airMoves } from '#shared/terms'
 import { bandOf, bandRank, fireStageOf } from '#shared/vapour/bands'
 import { airChanges, buildUp, purgeHours } from '#shared/vapour/build-up'
 import { evaporatingGrams, mixedVoc, releasedBy, releasedHours, releaseRate, sourceOf } from '#shared/vapour/emission'

@@ -11,6 +11,8 @@ export function dresser({ at, desk }: Calendar): Told[] {
     start({ at: at(-9, '9:30'), by: 'owner', name, schedule: 'painted-dresser', pieces: [name], place: 'floor', oldObject: true, order: { name: 'Dresser for the mill kitchen', dueAt: at(8, '17:00') } }),
     say('intake answered', at(-9, '9:50'), { by: 'owner', body: { question: 'lead', answer: 'tested, none' } }),
     say('intake answered', at(-9, '9:52'), { by: 'owner', body: { question: 'mould', answer: 'tested, none' } }),
+    say('intake answered', at(-9, '9:53'), { by: 'owner', body: { question: 'green cloth', answer: 'tested, none' } }),
+    say('intake answered', at(-9, '9:54'), { by: 'owner', body: { question: 'metal coating', answer: 'tested, none' } }),
     work('strip-hardware', at(-9, '11:00'), { by: 'helper' }),
     work('wash', at(-9, '14:10'), { by: 'helper' }),
     say('moved', at(-9, '14:30'), { by: 'maker', parts: ['doors'], place: 'rack' }),
