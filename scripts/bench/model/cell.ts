@@ -1,0 +1,126 @@
+import type { DryingMaterial } from '#shared/drying/types'
+import { climb, instantOf } from '#shared/drying/ladder'
+import type { PreparedMaterial } from '#shared/drying/material'
+import { predictCoat } from '#shared/drying/predict'
+import type { DryingTools } from '#shared/drying/tools'
+import type { Calendar, Visit } from './benches'
+import { calendarOf, checkpoints, reachedIn, roomDays, teach } from './benches'
+import { chanceOf } from './chance'
+import type { Learner } from './learners'
+import { meanReached, readied } from './learners'
+import type { Room } from './rooms'
+import { roomOf } from './rooms'
+import type { Bench, World } from './worlds'
+
+/** Counts of one rung at one checkpoint. `early`: not reached when give-till came round. */
+export interface Tally { times: number, early: number, none: number, likelier: number, ratio: number }
+
+const tally = (): Tally => ({ times: 0, early: 0, none: 0, likelier: 0, ratio: 0 })
+
+/** What one world and one material gave: [checkpoint][rung] for tested and untested rungs, after 20 fully tested coats, and the errors of likely after 12. */
+export interface CellResult {
+  tested: Tally[][]
+  untested: Tally[][]
+  full: Tally[]
+  /** Mean absolute log error of likely against the bench's own middle, on tested rungs after 12 coats: of the learner, the sheet, and the sheet times the mean. */
+  errors: { times: number, learner: number, sheet: number, mean: number }
+}
+
+interface Foretelling { room: Room, clockAt(now: number): ReturnType<Room['knownAt']>, calendar: Calendar }
+
+export const fullCoats = 20
+const roomsPerCell = 50
+
+function roomsOf(seed: number, tools: DryingTools): Foretelling[] {
+  return Array.from({ length: roomsPerCell }, (_, i) => {
+    const chance = chanceOf(seed + 7919 * i)
+    const room = roomOf(chance, roomDays, tools)
+    const kept = new Map<number, ReturnType<Room['knownAt']>>()
+    return {
+      room, calendar: calendarOf(chance),
+      clockAt: (now) => {
+        const clock = kept.get(now) ?? room.knownAt(now)
+        kept.set(now, clock)
+        return clock
+      },
+    }
+  })
+}
+
+interface Run { sheet: PreparedMaterial, material: DryingMaterial, world: World, learner: Learner, result: CellResult }
+
+function count(into: Tally, likelyAt: number | null, p90At: number | null, reachedAt: number, appliedAt: number) {
+  if (likelyAt === null || p90At === null) {
+    into.none++
+    return
+  }
+  into.times++
+  if (reachedAt > p90At) into.early++
+  if (reachedAt > likelyAt) into.likelier++
+  into.ratio += (p90At - appliedAt) / (likelyAt - appliedAt)
+}
+
+function foretell({ sheet, material, learner }: Run, place: Foretelling, visits: readonly Visit[], bench: Bench, appliedAt: number) {
+  const learned = learner.learn(sheet, visits, appliedAt)
+  const spans = [{ clock: place.clockAt(appliedAt), fromAt: appliedAt, toAt: null }]
+  const coat = { appliedAt, size: 'normal', ground: 'primed' } as const
+  const prediction = predictCoat(learned, coat, spans, { now: appliedAt })
+  const reachedAt = reachedIn(place.room, sheet, material.milestones, bench.coat(), appliedAt)
+  return { prediction, reachedAt, spans, coat }
+}
+
+function halfTested(run: Run, place: Foretelling, seed: number, parity: number) {
+  const chance = chanceOf(seed)
+  const { milestones } = run.material
+  const bench = run.world.bench(chance, milestones)
+  const tested = milestones.map((_, k) => k % 2 === parity)
+  const visits: Visit[] = []
+  let coats = 0
+  for (const [c, wanted] of checkpoints.entries()) {
+    for (; coats < wanted; coats++) visits.push(...teach(chance, bench, place.room, run.sheet, milestones, tested, coats, place.calendar.teaching[coats]!).visits)
+    const appliedAt = place.calendar.foretold[c]!
+    const { prediction, reachedAt, spans, coat } = foretell(run, place, visits, bench, appliedAt)
+    for (const [k, { likelyAt, p90At }] of prediction.milestones.entries()) {
+      count((tested[k] ? run.result.tested : run.result.untested)[c]![k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
+    }
+    if (wanted !== 12) continue
+    const middle = reachedIn(place.room, run.sheet, milestones, bench.middle(), appliedAt)
+    const way = climb(run.sheet, coat, spans)
+    const factor = meanReached(run.sheet, visits)
+    const miss = (at: number, k: number) => Math.abs(Math.log((at - appliedAt) / (middle[k]! - appliedAt)))
+    for (const [k, { likelyAt }] of prediction.milestones.entries()) {
+      if (!tested[k] || likelyAt === null) continue
+      run.result.errors.times++
+      run.result.errors.learner += miss(likelyAt, k)
+      run.result.errors.sheet += miss(instantOf(way, milestones[k]!.typical, k), k)
+      run.result.errors.mean += miss(instantOf(way, milestones[k]!.typical * factor, k), k)
+    }
+  }
+}
+
+function fullyTested(run: Run, place: Foretelling, seed: number) {
+  const chance = chanceOf(seed)
+  const { milestones } = run.material
+  const bench = run.world.bench(chance, milestones)
+  const every = milestones.map(() => true)
+  const visits: Visit[] = []
+  for (let coats = 0; coats < fullCoats; coats++) visits.push(...teach(chance, bench, place.room, run.sheet, milestones, every, coats, place.calendar.teaching[coats]!).visits)
+  const appliedAt = place.calendar.foretold.at(-1)!
+  const { prediction, reachedAt } = foretell(run, place, visits, bench, appliedAt)
+  for (const [k, { likelyAt, p90At }] of prediction.milestones.entries()) count(run.result.full[k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
+}
+
+/** Runs so many benches of a world on a material, half of whose rungs each bench tests, and as many that test all of them. Same seed, same numbers. */
+export function runCell(world: World, material: DryingMaterial, learner: Learner, benches: number, seed: number, tools: DryingTools): CellResult {
+  const rungs = material.milestones.length
+  const grid = () => checkpoints.map(() => Array.from({ length: rungs }, tally))
+  const result: CellResult = { tested: grid(), untested: grid(), full: Array.from({ length: rungs }, tally), errors: { times: 0, learner: 0, sheet: 0, mean: 0 } }
+  const run = { sheet: readied(material, tools), material, world, learner, result }
+  const places = roomsOf(seed, tools)
+  for (let i = 0; i < benches; i++) {
+    const place = places[i % places.length]!
+    halfTested(run, place, seed + 104_729 * (i + 1), i % 2)
+    fullyTested(run, place, seed + 104_729 * (i + 1) + 1)
+  }
+  return result
+}

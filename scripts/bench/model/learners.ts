@@ -1,0 +1,23 @@
+import type { DryingMaterial } from '#shared/drying/types'
+import type { DryingTools } from '#shared/drying/tools'
+import type { PreparedMaterial } from '#shared/drying/material'
+import { prepareMaterial } from '#shared/drying/material'
+import type { Visit } from './benches'
+
+/** A way of learning from visits: gives the material made ready for the next coat. `sheet` is the material made ready without them. */
+export interface Learner { name: string, says: string, learn(sheet: PreparedMaterial, visits: readonly Visit[], now: number): PreparedMaterial }
+
+/** Baseline: nothing is learned. */
+export const sheetAlone: Learner = { name: 'sheet', says: 'the sheet alone', learn: sheet => sheet }
+
+/** Factor of the other baseline: the mean of what a first "reached" said over the sheet's typical. 1 without any. */
+export function meanReached(sheet: PreparedMaterial, visits: readonly Visit[]): number {
+  const ratios = visits.filter(v => v.reached).map(v => v.minutes / sheet.rungs[v.rung]!.typical)
+  return ratios.length > 0 ? ratios.reduce((sum, r) => sum + r, 0) / ratios.length : 1
+}
+
+export const learners: Record<string, Learner> = { sheet: sheetAlone }
+
+export function readied(material: DryingMaterial, tools: DryingTools): PreparedMaterial {
+  return prepareMaterial(material, tools)
+}
