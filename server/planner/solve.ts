@@ -2,6 +2,7 @@ import { makePlan } from '#shared/planning/plan'
 import { lowerBound } from './bound'
 import { construct } from './construct'
 import { compile } from './model'
+import { planProject } from './project-plan'
 import { randomFrom } from './random'
 import { byPrevious, byRule, ruleCount, shaken } from './rules'
 import { makeUnits, piecesOf } from './units'
@@ -58,6 +59,8 @@ export function solve(problem: PlanProblem, options: SolveOptions = {}): Plan {
   const began = now()
   const model = compile(problem)
   const bound = lowerBound(model)
+  const project = planProject(problem, { seed, schedules, shouldStop, now, bound })
+  if (project) return project
   const random = randomFrom(seed)
   const given = tries(model)
   let best: { plan: Plan, units: Unit[] } | null = null
