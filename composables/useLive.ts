@@ -1,28 +1,76 @@
-import { useEventSource } from '@vueuse/core'
+import { useEventListener, useIntervalFn } from '@vueuse/core'
+import type { Word } from '#shared/heard'
 
-interface Word { revision: number, at: number }
+/** Two beats and a little: a connection silent for so long is dead, whatever the browser thinks of it. ms. */
+const silentMs = 45_000
+/** On waking up, one missed beat is enough to doubt the connection. ms. */
+const beatMissedMs = 25_000
+const openWithinMs = 10_000
+const firstTryMs = 1000
+const slowestTryMs = 10_000
 
 /**
- * The studio's live word: `revision` grows with every change anybody makes, `heardAt` is this device's clock
- * (ms) at the last word, heard at least every 20 seconds while connected. Null before the first.
+ * The studio's live word, taken up again by itself: after an error, after silence, and at once when the device wakes or
+ * finds its network again. `open` while the connection stands; `word` null before the first.
  * @param wallToken for a wall tablet; otherwise the session opens the stream
  */
 export function useLive(wallToken: string | null = null) {
-  const revision = ref<number | null>(null)
-  const heardAt = ref<number | null>(null)
-  const url = wallToken === null ? '/api/live' : `/api/live?wall=${encodeURIComponent(wallToken)}`
+  const word = shallowRef<Word | null>(null)
+  const open = ref(false)
   // On the server there is nothing to listen with, and nobody to tell.
-  if (import.meta.server) return { revision, heardAt, state: ref<'open' | 'connecting' | 'cut off'>('connecting') }
+  if (import.meta.server) return { word, open }
 
-  const { data, status } = useEventSource<string[], Word>(url, [], {
-    autoReconnect: { delay: 2000 },
-    serializer: { read: raw => raw ? JSON.parse(raw) as Word : { revision: 0, at: 0 } },
+  const url = wallToken === null ? '/api/live' : `/api/live?wall=${encodeURIComponent(wallToken)}`
+  let source: EventSource | null = null
+  let signAt = 0
+  let tryMs = firstTryMs
+  let timer: ReturnType<typeof setTimeout> | undefined
+
+  function close() {
+    clearTimeout(timer)
+    source?.close()
+    source = null
+    open.value = false
+  }
+  function connect() {
+    close()
+    signAt = Date.now()
+    source = new EventSource(url)
+    source.onopen = () => {
+      open.value = true
+      tryMs = firstTryMs
+    }
+    source.onmessage = ({ data }: MessageEvent<string>) => {
+      signAt = Date.now()
+      word.value = JSON.parse(data) as Word
+    }
+    // A browser tries again by itself after some failures and not after others: one way for all of them.
+    source.onerror = () => {
+      close()
+      timer = setTimeout(connect, tryMs)
+      tryMs = Math.min(tryMs * 2, slowestTryMs)
+    }
+  }
+  const doubt = (afterMs: number) => (source === null || Math.abs(Date.now() - signAt) > afterMs) && connect()
+
+  connect()
+  useIntervalFn(() => source !== null && doubt(open.value ? silentMs : openWithinMs), 5000)
+  useEventListener('online', () => doubt(0))
+  useEventListener('pageshow', () => doubt(beatMissedMs))
+  useEventListener(document, 'visibilitychange', () => document.visibilityState === 'visible' && doubt(beatMissedMs))
+  onScopeDispose(close)
+  return { word, open }
+}
+
+/**
+ * Calls `refresh` whenever the studio has moved on, and again with every word until it has succeeded.
+ * @param refresh resolves to whether the page now shows what it asked for
+ */
+export function useLiveRefresh(refresh: () => Promise<boolean>) {
+  const { word } = useLive()
+  let shown: number | null = null
+  watch(word, async (said) => {
+    if (said === null || said.revision === shown) return
+    if (await refresh()) shown = said.revision
   })
-  watch(data, (word) => {
-    if (!word) return
-    revision.value = word.revision
-    heardAt.value = Date.now()
-  })
-  const state = computed(() => status.value === 'OPEN' ? 'open' as const : heardAt.value === null ? 'connecting' as const : 'cut off' as const)
-  return { revision, heardAt, state }
 }

@@ -12,6 +12,9 @@ export async function usePieceDetail(id: string) {
   watch(() => store.state?.revision, (now, before) => {
     if (now !== before) void refresh()
   })
+  watch(() => store.heardAt, () => {
+    if (error.value) void refresh()
+  })
   await asked
   return { detail: computed(() => data.value ?? null), failed: computed(() => error.value !== null && error.value !== undefined), missing: computed(() => error.value?.statusCode === 404), refresh }
 }

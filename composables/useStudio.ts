@@ -36,14 +36,15 @@ export async function useStudio(wallToken: string | null = null) {
     shell.value = { zone: store.state?.studio.zone ?? null, studio: store.state?.studio.name ?? null, notHeardSince: cutOff.value ? heardAt.value : null }
   })
   const live = useLive(wallToken)
-  watch(live.heardAt, at => at !== null && store.hear(at))
-  watch(live.revision, revision => revision !== null && revision !== store.state?.revision && void store.load(wallToken))
+  watch(live.word, word => word !== null && void store.hear(word, wallToken).catch(() => undefined))
   onMounted(() => {
     untold.start()
     void untold.tellAll().then(() => untold.acts.length > 0 ? undefined : store.load(wallToken))
   })
   useEventListener('online', () => void untold.tellAll())
   useIntervalFn(() => untold.acts.length > 0 && void untold.tellAll(), 15_000)
+  // The word came through and the state did not: the next word may be twenty seconds away.
+  useIntervalFn(() => store.failed && live.open.value && void store.load(wallToken).catch(() => undefined), 2000)
 
   // Last, for after a wait nothing can be tied to the page any more: what was would never start, or never end.
   await callOnce(`studio ${wallToken ?? ''}`, () => store.load(wallToken), { mode: 'navigation' })

@@ -1,10 +1,12 @@
 import { defineStore } from 'pinia'
 import type { StudioState } from '#shared/schemas/piece-state'
+import { clockShift as shiftOf, heardBy } from '#shared/heard'
+import type { Word } from '#shared/heard'
 import { fromWire } from '#shared/schemas/wire'
 import type { Wire } from '#shared/schemas/wire'
 
-/** A device whose clock is off by more than this is read by the studio's clock. */
-const clockSlackMs = 60_000
+/** A question on a dead connection is given up after so long, so that the next goes another way. ms. */
+const answerMs = 10_000
 
 const isAbsent = (error: unknown) => typeof error === 'object' && error !== null && 'statusCode' in error && error.statusCode === 404
 
@@ -18,15 +20,17 @@ export const useStudioStore = defineStore('studio', () => {
   /** The wall link opens nothing: revoked, or never made. */
   const refused = ref(false)
   let asking: Promise<void> | null = null
+  let askingNext: Promise<void> | null = null
 
   async function ask(wallToken: string | null) {
     const request = useRequestFetch()
+    // What the answer says was true at the earliest when it was asked for: a device may sleep over an answer.
+    const askedAt = Date.now()
     try {
-      const answer = await request<Wire<StudioState>>('/api/state', { query: wallToken === null ? {} : { wall: wallToken } })
-      const now = Date.now()
+      const answer = await request<Wire<StudioState>>('/api/state', { query: wallToken === null ? {} : { wall: wallToken }, ...import.meta.client ? { timeout: answerMs } : {} })
       state.value = fromWire<StudioState>(answer)
-      heardAt.value = now
-      clockShift.value = Math.abs(state.value.at - now) > clockSlackMs ? state.value.at - now : 0
+      heardAt.value = askedAt
+      clockShift.value = shiftOf(askedAt, state.value.at, Date.now())
       failed.value = false
       refused.value = false
     }
@@ -41,15 +45,27 @@ export const useStudioStore = defineStore('studio', () => {
     }
   }
 
-  /** Asks for the state; two who ask at once share one answer. What is shown stays when it does not come. */
+  /**
+   * Asks for the state as it is from now on: those who come while a question is on its way share the one after it.
+   * What is shown stays when no answer comes.
+   */
   function load(wallToken: string | null = null): Promise<void> {
-    asking ??= ask(wallToken).finally(() => { asking = null })
-    return asking
+    if (asking === null) {
+      asking = ask(wallToken).finally(() => { asking = null })
+      return asking
+    }
+    askingNext ??= asking.catch(() => undefined).then(() => {
+      askingNext = null
+      return load(wallToken)
+    })
+    return askingNext
   }
 
-  /** A word from the live stream: the studio is there, even when nothing changed. */
-  function hear(at: number) {
-    heardAt.value = Math.max(heardAt.value ?? 0, at)
+  /** A word from the live stream: that the studio is there, or that the state has to be asked for. */
+  async function hear(word: Word, wallToken: string | null) {
+    const at = heardBy(word, state.value, Date.now(), clockShift.value)
+    if (at === null) await load(wallToken)
+    else heardAt.value = Math.max(heardAt.value ?? 0, at)
   }
 
   return { state, heardAt, clockShift, failed, refused, load, hear }

@@ -3,6 +3,8 @@ import { FetchError } from 'ofetch'
 import type { ActRequest } from '#shared/schemas/act'
 
 const shelf = 'stillwet untold'
+/** An act without an answer for so long counts as not told yet: telling it twice under its key records it once. ms. */
+const answerMs = 15_000
 
 /** What came of telling an act. `later`: not reached; it is kept on this device and told as soon as it can be. */
 export type Told =
@@ -44,7 +46,7 @@ export const useUntoldStore = defineStore('untold', () => {
     if (!acts.value.some(each => each.clientKey === act.clientKey)) acts.value = [...acts.value, act]
     keep()
     try {
-      const { actId } = await callApi<{ actId: number }>('/api/acts', { method: 'POST', body: act })
+      const { actId } = await callApi<{ actId: number }>('/api/acts', { method: 'POST', body: act, timeout: answerMs })
       drop(act)
       return { outcome: 'told', actId }
     }

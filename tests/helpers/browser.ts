@@ -37,10 +37,15 @@ export async function openPage(browser: Browser, origin: string, options: Browse
   return { page, problems }
 }
 
+/** Waits until the page answers to presses: its script has taken over all that the server drew. */
+export async function takenOver(page: Page): Promise<void> {
+  await page.waitForFunction(() => (document.querySelector('#__nuxt') as (Element & { __vue_app__?: { $nuxt: { isHydrating: boolean } } }) | null)?.__vue_app__?.$nuxt.isHydrating === false)
+}
+
 /** Goes to a page and waits until it answers to presses. */
 export async function visit(page: Page, path: string): Promise<void> {
   await page.goto(path, { waitUntil: 'load' })
-  await page.waitForFunction(() => Boolean((document.querySelector('#__nuxt') as (Element & { __vue_app__?: unknown }) | null)?.__vue_app__))
+  await takenOver(page)
 }
 
 /** What axe finds wrong, as `rule: element`. */
