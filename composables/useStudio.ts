@@ -24,7 +24,7 @@ export async function useStudio(wallToken: string | null = null) {
   const cutOff = computed(() => heardAt.value !== null && now.value - heardAt.value >= cutOffAfterMs)
   const who = computed(() => {
     const member = session.value?.member
-    return member ? { role: member.role, helperKinds: member.stepKinds, equipped: false } : null
+    return member ? { role: member.role, helperKinds: member.stepKinds, equipped: false, memberId: member.id } : null
   })
   const pieces = computed((): ReadPiece[] => {
     const state = store.state

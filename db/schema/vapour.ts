@@ -39,6 +39,8 @@ export const vapourLimit = sqliteTable('vapour_limit', {
   lelGramsM3: real('lel_grams_m3'),
   vocGramsPerLitre: real('voc_grams_per_litre'),
   exemptGramsPerLitre: real('exempt_grams_per_litre'),
+  spreadM2PerLitre: real('spread_m2_per_litre'),
+  touchDryMinutes: real('touch_dry_minutes'),
   memberId: integer('member_id').notNull(),
   at: instant('at').notNull(),
 }, t => [

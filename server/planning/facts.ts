@@ -1,5 +1,6 @@
 import { and, asc, eq, isNull, sql } from 'drizzle-orm'
 import { batch, closure, coat, member, memberStepKind, openHours, order, part, piece, pieceStep, pin, place, plan, planEntry, prediction, recoatWindow, stay, stepLink, stepTarget, studio, turn, windowPrediction } from '~~/db/schema'
+import { readVapourRooms } from '~~/server/planning/vapour'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 
@@ -20,7 +21,7 @@ export function readPlanFacts(db: Database, studioId: number) {
     .where(and(openSteps, sql`${turn.status} in ('waiting', 'doing')`)).orderBy(asc(turn.stepId), asc(turn.ordinal)).all().map(row => row.turn)
   const links = db.select({ link: stepLink }).from(pieceStep).innerJoin(stepLink, eq(stepLink.toStepId, pieceStep.id)).where(openSteps).all().map(row => row.link)
   const targets = db.selectDistinct({ stepId: stepTarget.stepId, partId: stepTarget.partId }).from(pieceStep).innerJoin(stepTarget, eq(stepTarget.stepId, pieceStep.id)).where(openSteps).all()
-  return { owner, pieces, steps: steps.filter(step => open.some(status => status === step.status)), aside: new Set(steps.filter(step => step.status === 'set aside').map(step => step.id)), turns, links, targets, ...readFilms(db, studioId), ...readHands(db, studioId), ...readLast(db, studioId) }
+  return { owner, pieces, steps: steps.filter(step => open.some(status => status === step.status)), aside: new Set(steps.filter(step => step.status === 'set aside').map(step => step.id)), turns, links, targets, vapour: readVapourRooms(db, studioId), ...readFilms(db, studioId), ...readHands(db, studioId), ...readLast(db, studioId) }
 }
 export type PlanFacts = NonNullable<ReturnType<typeof readPlanFacts>>
 

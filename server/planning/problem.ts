@@ -3,6 +3,7 @@ import type { Hands } from '~~/server/planning/hands'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId, lagsOf } from '~~/server/planning/lags'
 import type { LagInput, StepWork } from '~~/server/planning/lags'
+import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import { minutesFrom } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { planProblem } from '#shared/planning/problem'
@@ -28,19 +29,19 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt, zeroAt + horizonDays * 24 * 60 * 60_000)
   const works = worksOf(facts)
   const found = byPiece(works).map(own => lagsOf(own, facts, toCome, zeroAt))
-  const lags = found.flatMap(each => each.lags)
-  const leftOut = follow(new Set(found.flatMap(each => [...each.unreachable])), works, lags, hands)
+  const lags = [...found.flatMap(each => each.lags), ...keptOut(works, facts, toCome.shut, zeroAt)]
+  const leftOut = follow(new Set([...found.flatMap(each => [...each.unreachable]), ...refusedWork(works, facts)]), works, lags, hands)
   const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
   const known = new Set(planned.flatMap(work => work.turns.map(turn => activityId(turn.id))))
   const input: PlanInput = {
-    activities: planned.flatMap(work => work.turns.map(turn => activity(work.step, turn, hands))),
+    activities: planned.flatMap(work => work.turns.map(turn => activity(work.step, turn, handsFor(work, facts, toCome, hands)))),
     resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: each.open })), ...placesOf(facts)],
     lags: lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from))),
     rests: restsOf(planned, facts, lags, known),
-    apart: apartOf(planned),
+    apart: [...apartOf(planned), ...vapourApart(planned, facts, toCome)],
     families: familiesOf(planned),
     jobs: jobsOf(planned, facts, zeroAt),
-    fixed: fixedOf(planned, facts, hands, zeroAt),
+    fixed: fixedOf(planned, facts, toCome, hands, zeroAt),
     horizon: horizonDays * 24 * 60,
     previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
   }
@@ -82,6 +83,13 @@ function follow(unreachable: Set<number>, works: readonly StepWork[], lags: read
 }
 
 const turnOf = (id: string | null | undefined) => (id ? Number(id.slice(1)) : null)
+
+/** In a shut room only its equipped operator goes on with the same solvent work. */
+function handsFor(work: StepWork, facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[]): readonly Hands[] {
+  const operatorId = operatorOf(work, facts, toCome.shut)
+  const own = hands.filter(each => each.memberId === operatorId && each.may(work.step.kind))
+  return own.length >= Math.max(1, work.step.hands) ? own : hands
+}
 
 function activity(step: Step, turn: TurnRow, hands: readonly Hands[]): PlanInput['activities'][number] {
   const able = hands.filter(each => each.may(step.kind)).map(each => each.id)
@@ -158,9 +166,10 @@ function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): N
 }
 
 /** Work in hand stays with who is at it; a pin stays where somebody put it. */
-function fixedOf(works: readonly StepWork[], facts: PlanFacts, hands: readonly Hands[], zeroAt: number): NonNullable<PlanInput['fixed']> {
-  return works.flatMap(({ step, turns }) => turns.flatMap((turn) => {
-    const able = hands.filter(each => each.may(step.kind))
+function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[], zeroAt: number): NonNullable<PlanInput['fixed']> {
+  return works.flatMap(work => work.turns.flatMap((turn) => {
+    const { step } = work
+    const able = handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind))
     const chosen = (memberId: number | null) => [...able].sort((a, b) => Number(b.memberId === memberId) - Number(a.memberId === memberId)).slice(0, step.hands).map(each => each.id)
     if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor), resources: chosen(turn.doingMemberId) }]
     const pinned = facts.pins.find(pin => pin.turnId === turn.id && pin.startsAt >= zeroAt)

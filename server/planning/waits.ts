@@ -2,6 +2,8 @@ import { airOf, roomAirs } from '~~/server/work/air'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { materialsToCome } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
+import { readShut } from '~~/server/planning/vapour'
+import type { ShutRoom } from '~~/server/planning/vapour'
 import type { Database } from '~~/server/utils/database'
 import { roomClock } from '#shared/drying/clock'
 import type { RoomClock } from '#shared/drying/clock'
@@ -40,10 +42,13 @@ export class WaitsToCome {
   readonly #clocks = new Map<number | null, RoomClock>()
   readonly #kept = new Map<string, CoatPrediction>()
   readonly #clockOf: (roomId: number | null) => RoomClock
+  /** Rooms that nobody enters till somebody opens them. */
+  readonly shut: ReadonlyMap<number, ShutRoom>
 
   constructor(db: Database, facts: PlanFacts, readonly now: number) {
     this.#materials = dryingMaterials(db, facts.owner.id, materialsToCome(facts))
     const airs = roomAirs(db, facts.owner, now)
+    this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
   }
 

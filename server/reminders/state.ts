@@ -5,6 +5,8 @@ import type { StepKind, TurnKind } from '#shared/terms'
 import { startOfLocalDay, studioZone } from '#shared/time'
 import type { StudioZone } from '#shared/time'
 import type { StudioHours } from './hours'
+import { readShutRooms, readStarts } from './vapour'
+import type { ShutRoomCall, VapourStartCall } from './vapour'
 
 /** A turn of the current plan that waits to be done, as far as calls need it. Times in ms UTC. */
 export interface PlannedTurn {
@@ -45,6 +47,9 @@ export interface CallState {
   outdoors: { pieceName: string, placeName: string }[]
   usedToday: { name: string, kind: string, libraryKey: string | null }[]
   rags: { dutyId: number, roomName: string, lastOilAt: number, lastOilActId: number }[]
+  /** Solvent work begun of late in rooms that nobody has opened since, and shut rooms with the floor under their opening. */
+  starts: VapourStartCall[]
+  shut: ShutRoomCall[]
 }
 
 /** How far ahead calls are prepared, in ms. */
@@ -69,6 +74,8 @@ export function readCallState(db: Database, studioId: number, now: number): Call
     usedToday: readUsed(db, studioId, startOfLocalDay(now, zone)),
     rags: db.select({ dutyId: ragDuty.id, roomName: room.name, lastOilAt: ragDuty.lastOilAt, lastOilActId: ragDuty.lastOilActId })
       .from(ragDuty).innerJoin(room, eq(ragDuty.roomId, room.id)).where(and(eq(ragDuty.studioId, studioId), isNull(ragDuty.answeredAt))).all(),
+    starts: readStarts(db, studioId, now),
+    shut: readShutRooms(db, studioId, now),
   }
 }
 

@@ -4,6 +4,8 @@ import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
 import { mayHandle } from '~~/server/services/handling'
+import { refuseByCaution } from '~~/server/services/act-cautions'
+import { noteStart } from '~~/server/services/vapour-starts'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, conflict, impossible, isRefusal, malformed, notAllowed } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
@@ -52,7 +54,9 @@ export function recordAct(db: Database, studioId: number, teller: Teller, reques
     const folded = refold(tx, studioId, pieces.map(each => each.id))
     const problem = folded.flatMap(each => each.folded.problems).find(each => each.actId === actId)
     if (problem) return impossible(problemSentence(problem.why))
-    afterAct(tx, studioId, { actId, kind: request.kind, body, pieceIds: pieces.map(each => each.id), memberId: actingOf(teller).memberId, now })
+    const { memberId } = actingOf(teller)
+    noteStart(tx, studioId, memberId, request, body, actId, now)
+    afterAct(tx, studioId, { actId, kind: request.kind, body, pieceIds: pieces.map(each => each.id), memberId, doneAt: Date.parse(request.doneAt), now })
     return { ok: true, actId, repeated: false }
   })
 }
@@ -86,7 +90,7 @@ function findRefusal(tx: Transaction, studioId: number, teller: Teller, request:
   return checkTime(Date.parse(request.doneAt), now)
     ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
     ?? checkReferences(tx, studioId, body)
-    ?? (request.kind === 'air' && body.kind === 'warm air' ? checkWarmAir(tx, studioId, pieces) : null)
+    ?? refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
 }
 
 export function checkTime(doneAt: number, now: number): Refusal | null {
@@ -125,11 +129,6 @@ function checkReferences(tx: Transaction, studioId: number, body: Record<string,
   if (typeof placeId === 'number' && !tx.select({ id: place.id }).from(place).where(owned(place, studioId, placeId)).get()) return malformed({ placeId: actRefusals.noPlace })
   if (typeof materialVersionId === 'number' && !tx.select({ id: materialVersion.id }).from(materialVersion).where(owned(materialVersion, studioId, materialVersionId)).get()) return malformed({ materialVersionId: actRefusals.noMaterial })
   return null
-}
-
-function checkWarmAir(tx: Transaction, studioId: number, pieces: PieceRow[]): Refusal | null {
-  const states = pieceStates(tx, studioId, pieces.map(each => each.id))
-  return states.some(state => state.groups.some(group => group.films.some(film => film.solventBorne))) ? impossible(actRefusals.warmAirOnSolvent) : null
 }
 
 /** The parts an act is about with the instant of each: those named, those of the step, or all that are not joined to another. */

@@ -41,7 +41,7 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
     const newId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: old.kind, doneAt, toldAt: now, acting: actingOf(teller), body: { ...body }, subjects, replaces: { id: old.id, rootId }, voided: request.takeBack ?? false })
     const pieceIds = piecesOf(tx, studioId, [...was, ...subjects].map(each => each.partId))
     refold(tx, studioId, pieceIds)
-    afterAct(tx, studioId, { actId: rootId, kind: old.kind, body: { ...body }, pieceIds, memberId: actingOf(teller).memberId, now })
+    afterAct(tx, studioId, { actId: rootId, kind: old.kind, body: { ...body }, pieceIds, memberId: actingOf(teller).memberId, doneAt, now })
     return { ok: true, actId: newId, repeated: false }
   })
 }

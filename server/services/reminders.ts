@@ -31,10 +31,20 @@ export function answerReminder(db: Database, studioId: number, memberId: number,
     const row = tx.select({ status: reminder.status, kind: cause.kind }).from(reminder).innerJoin(cause, eq(reminder.causeId, cause.id)).where(owned(reminder, studioId, id)).get()
     if (!row) return absent()
     if (row.kind === 'rags') return impossible(callWords.rags.sayWhere)
+    if (row.kind === 'vapour') return impossible(callWords.vapour.stays)
     tx.insert(seen).values({ studioId, reminderId: id, memberId, at: now }).onConflictDoNothing().run()
     tx.update(reminder).set({ status: 'answered', leaseUntil: null }).where(and(owned(reminder, studioId, id), inArray(reminder.status, ['due', 'claimed', 'sent']))).run()
     tx.update(delivery).set({ status: 'failed', nextTryAt: null, changedAt: now, problem: callWords.delivery.notNeeded })
       .where(scoped(delivery, studioId, eq(delivery.reminderId, id), eq(delivery.status, 'queued'))).run()
+    return { ok: true }
+  })
+}
+
+/** Somebody has read a call. It stays open: a fire call is not answered by being read. */
+export function noteSeen(db: Database, studioId: number, memberId: number, id: number, now: number): { ok: true } | Refusal {
+  return change(db, studioId, 'calls', (tx): { ok: true } | Refusal => {
+    if (!tx.select({ id: reminder.id }).from(reminder).where(owned(reminder, studioId, id)).get()) return absent()
+    tx.insert(seen).values({ studioId, reminderId: id, memberId, at: now }).onConflictDoNothing().run()
     return { ok: true }
   })
 }

@@ -1,6 +1,8 @@
 import { asc, eq, isNull, sql } from 'drizzle-orm'
 import { keepOut, place, room, studio } from '~~/db/schema'
 import { memberNames } from '~~/server/services/member-names'
+import type { StartRow } from '~~/server/services/vapour-facts'
+import { notClearBefore, readVapour } from '~~/server/services/vapour-rooms'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { roomAirs } from '~~/server/work/air'
@@ -21,6 +23,9 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
   if (!owner) return []
   const airs = roomAirs(db, owner, now)
   const shut = db.select().from(keepOut).where(scoped(keepOut, studioId, isNull(keepOut.openedAt))).all()
+  // A shut room is rare: only then is its air reckoned here.
+  const read = shut.length > 0 ? readVapour(db, studioId, now) : null
+  const starts = read?.starts ?? new Map<number, StartRow>()
   const names = shut.length > 0 ? memberNames(db, studioId) : new Map<number, string>()
   return db.select().from(room).where(scoped(room, studioId)).orderBy(asc(room.sort), asc(room.id)).all().map((row): RoomState => {
     const known = airs.get(row.id)
@@ -30,7 +35,8 @@ export function roomStates(db: Reader, studioId: number, now: number): RoomState
       id: row.id, name: row.name, heated: row.heated, outdoor: row.outdoor, sprayArea: row.sprayArea,
       air: air ? { tempC: air.tempC, rh: air.rh, readAt: known.readings.filter(each => each.at <= now).at(-1)?.at ?? null, assumed: air.assumed } : null,
       waterSpeed: air ? driverRate('water', air, sheetAir) : null,
-      keepOut: closed ? { sinceAt: closed.fromAt, opensBy: names.get(closed.opensByMemberId ?? 0) ?? null } : null,
+      sleptIn: row.sleptIn,
+      keepOut: closed ? { sinceAt: closed.fromAt, opensBy: names.get(closed.opensByMemberId ?? 0) ?? null, operatorId: starts.get(row.id)?.exhaust === 'running' ? closed.opensByMemberId : null, clearAt: read ? notClearBefore(row, read) : null } : null,
     }
   })
 }

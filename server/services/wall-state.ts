@@ -8,7 +8,7 @@ import { sheetWords } from '#shared/words/sheet'
 export function wallState(state: StudioState): StudioState {
   return {
     ...state,
-    rooms: state.rooms.map(room => ({ ...room, air: null, waterSpeed: null })),
+    rooms: state.rooms.map(room => ({ ...room, air: null, waterSpeed: null, keepOut: room.keepOut && { ...room.keepOut, operatorId: null } })),
     pieces: state.pieces.map(wallPiece), sessions: [], rags: [], hours: [],
   }
 }

@@ -1,18 +1,25 @@
-import { and, eq, inArray, isNull } from 'drizzle-orm'
-import { coat, coatTarget, intake, keepOut, materialVersion, part, place, ragDuty, room, stay } from '~~/db/schema'
+import { eq, inArray, isNull } from 'drizzle-orm'
+import { coat, coatTarget, intake, keepOut, materialVersion, pieceStep, ragDuty, room, vapourStart } from '~~/db/schema'
+import { keepsPeopleOut } from '~~/server/services/vapour-rooms'
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { predictPieces } from '~~/server/work/predict'
+import { roomsOfParts } from '~~/server/work/rooms-of-parts'
+import type { RoomRow } from '~~/server/work/rooms-of-parts'
 import { intakeQuestions } from '#shared/terms'
-import type { ActKind } from '#shared/terms'
+import type { ActKind, StepKind } from '#shared/terms'
+import { isSolventBorne } from '#shared/vapour/facts'
 
-interface Told { actId: number, kind: ActKind, body: Record<string, unknown>, pieceIds: number[], memberId: number | null, now: number }
+interface Told { actId: number, kind: ActKind, body: Record<string, unknown>, pieceIds: number[], memberId: number | null, doneAt: number, now: number }
 
 /** What an act brings with it beyond the piece itself: times, rooms nobody enters, rags to be dealt with, answers. */
 export function afterAct(tx: Transaction, studioId: number, told: Told) {
   if (told.kind === 'intake answered') answerIntake(tx, studioId, told)
-  if (told.kind === 'coat on' || told.kind === 'glue-up on') noteVapourAndRags(tx, studioId, told)
   predictPieces(tx, studioId, told.pieceIds, told.now)
+  if (told.kind === 'began') shutAtStart(tx, studioId, told)
+  if (told.kind === 'work done') noteOilDust(tx, studioId, told)
+  // After the predictions: what the air asks for is reckoned from them.
+  if (told.kind === 'coat on' || told.kind === 'glue-up on') noteVapourAndRags(tx, studioId, told)
 }
 
 function answerIntake(tx: Transaction, studioId: number, told: Told) {
@@ -25,42 +32,42 @@ function answerIntake(tx: Transaction, studioId: number, told: Told) {
   }
 }
 
-/** A solvent film in the spray area shuts the room; a drying oil leaves rags. Both are per room, once. */
+/** A solvent film keeps people out of its room where the air asks for it; a drying oil leaves rags. Both are per room, once. */
 function noteVapourAndRags(tx: Transaction, studioId: number, told: Told) {
   const films = tx.select({ endedAt: coat.endedAt, solvent: materialVersion.solvent, dryingOil: materialVersion.dryingOil, partId: coatTarget.partId })
-    .from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId)).innerJoin(coatTarget, eq(coatTarget.coatId, coat.id))
+    .from(coat).leftJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId)).innerJoin(coatTarget, eq(coatTarget.coatId, coat.id))
     .where(scoped(coat, studioId, eq(coat.actId, told.actId), inArray(coat.pieceId, told.pieceIds))).all()
   const roomOf = roomsOfParts(tx, studioId, told.pieceIds)
-  const coats = films.flatMap((film) => {
-    const where = roomOf(film.partId)
-    return where ? [{ ...film, ...where }] : []
-  })
-  const rooms = new Map<number, { endedAt: number, shuts: boolean, rags: boolean }>()
-  for (const each of coats) {
-    const known = rooms.get(each.roomId) ?? { endedAt: 0, shuts: false, rags: false }
-    rooms.set(each.roomId, {
-      endedAt: Math.max(known.endedAt, each.endedAt),
-      shuts: known.shuts || (each.sprayArea && !['water', 'none'].includes(each.solvent)),
-      rags: known.rags || each.dryingOil,
-    })
+  const rooms = new Map<number, { row: RoomRow, endedAt: number, solvent: boolean, rags: boolean }>()
+  for (const film of films) {
+    const row = roomOf(film.partId)
+    if (!row) continue
+    const known = rooms.get(row.id) ?? { row, endedAt: 0, solvent: false, rags: false }
+    rooms.set(row.id, { row, endedAt: Math.max(known.endedAt, film.endedAt), solvent: known.solvent || isSolventBorne(film.solvent), rags: known.rags || film.dryingOil === true })
   }
-  for (const [roomId, { endedAt, shuts, rags }] of rooms) {
-    if (shuts) shutRoom(tx, studioId, roomId, endedAt, told)
-    if (rags) askForRags(tx, studioId, roomId, endedAt, told)
+  for (const { row, endedAt, solvent, rags } of rooms.values()) {
+    if (solvent && keepsPeopleOut(tx, studioId, row, told.now)) shutRoom(tx, studioId, row.id, endedAt, told)
+    if (rags) askForRags(tx, studioId, row.id, endedAt, told)
   }
 }
 
-/** The room each part stands in; a part joined to another stands where that one does. Other parts of the piece may be elsewhere. */
-function roomsOfParts(tx: Transaction, studioId: number, pieceIds: readonly number[]) {
-  const parts = tx.select({ id: part.id, into: part.intoPartId, roomId: room.id, sprayArea: room.sprayArea }).from(part)
-    .leftJoin(stay, and(eq(stay.partId, part.id), isNull(stay.toAt))).leftJoin(place, eq(place.id, stay.placeId)).leftJoin(room, eq(room.id, place.roomId))
-    .where(scoped(part, studioId, inArray(part.pieceId, [...pieceIds]))).all()
-  const byId = new Map(parts.map(each => [each.id, each]))
-  return (partId: number): { roomId: number, sprayArea: boolean } | null => {
-    let found = byId.get(partId)
-    for (let depth = 0; found && found.into !== null && depth < parts.length; depth++) found = byId.get(found.into)
-    return found && found.roomId !== null && found.sprayArea !== null ? { roomId: found.roomId, sprayArea: found.sprayArea } : null
-  }
+/** The sander, its bag and its paper hold oil too, after a film of drying oil was sanded. */
+function noteOilDust(tx: Transaction, studioId: number, told: Told) {
+  const kind = typeof told.body.step === 'string' ? tx.select({ kind: pieceStep.kind }).from(pieceStep).where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, told.pieceIds), eq(pieceStep.key, told.body.step))).get()?.kind : null
+  if (!sandingKinds.some(each => each === kind)) return
+  const oiled = tx.select({ partId: coatTarget.partId }).from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId)).innerJoin(coatTarget, eq(coatTarget.coatId, coat.id))
+    .where(scoped(coat, studioId, inArray(coat.pieceId, told.pieceIds), isNull(coat.settledAt), isNull(coat.strippedAt), eq(materialVersion.dryingOil, true))).all()
+  const roomOf = roomsOfParts(tx, studioId, told.pieceIds)
+  for (const roomId of new Set(oiled.flatMap(each => roomOf(each.partId)?.id ?? []))) askForRags(tx, studioId, roomId, told.doneAt, told)
+}
+
+const sandingKinds: readonly StepKind[] = ['light sanding', 'flat sanding', 'levelling']
+
+/** Solvent work that begins shuts a spray area at once, before the first coat is told. */
+function shutAtStart(tx: Transaction, studioId: number, told: Told) {
+  const started = tx.select({ roomId: vapourStart.roomId, sprayArea: room.sprayArea }).from(vapourStart).innerJoin(room, eq(room.id, vapourStart.roomId))
+    .where(scoped(vapourStart, studioId, eq(vapourStart.actId, told.actId))).all()
+  for (const { roomId, sprayArea } of started) if (sprayArea) shutRoom(tx, studioId, roomId, told.doneAt, told)
 }
 
 function shutRoom(tx: Transaction, studioId: number, roomId: number, fromAt: number, told: Told) {

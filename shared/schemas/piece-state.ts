@@ -116,7 +116,9 @@ export interface RoomState {
   air: { tempC: number, rh: number, readAt: number | null, assumed: boolean } | null
   /** How fast the water of a coat leaves in this air against a sheet's usual 20 °C and 50 %; null without air. */
   waterSpeed: number | null
-  keepOut: { sinceAt: number, opensBy: string | null } | null
+  /** `operatorId`: the one person who may go on with the same solvent work in there, with the exhaust running. `clearAt`: before that it is not expected to be clear; null when nobody can tell. */
+  keepOut: { sinceAt: number, opensBy: string | null, operatorId?: number | null, clearAt?: number | null } | null
+  sleptIn?: boolean
 }
 
 /** Like work done together, as the day ruler shows it. */

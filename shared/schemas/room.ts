@@ -1,6 +1,6 @@
 import * as z from 'zod/mini'
 import { name, rowId } from '#shared/schemas/common'
-import { placeKinds } from '#shared/terms'
+import { airMoves, placeKinds } from '#shared/terms'
 import { fields } from '#shared/words/fields'
 
 const between = (low: number, high: number, sentence: string) => z.number(sentence).check(z.gte(low, sentence), z.lte(high, sentence))
@@ -14,6 +14,9 @@ const roomFields = {
   sleptIn: z.boolean(fields.sleptIn),
   volumeM3: z.nullable(between(0.1, 100_000, fields.volume)),
   exhaustM3H: z.nullable(between(0, 1_000_000, fields.exhaust)),
+  /** Air changes an hour without the exhaust, and how that air is moved: null when nobody said. */
+  airChangesPerHour: z.optional(z.nullable(between(0, 500, fields.airChanges))),
+  airMoves: z.optional(z.nullable(z.enum(airMoves, fields.airMoves))),
   nightDropC: between(0, 30, fields.nightDrop),
   sort,
 }

@@ -32,7 +32,8 @@ function ask(room: VentilatedRoom, all: readonly WetCoat[], { from, hours }: Vap
   const volumeM3 = positive('volumeM3', known('volume', room.volumeM3, assumedVolumeM3))
   const n = within('airChangesPerHour', known('air changes', room.airChangesPerHour, closedAirChanges), 0, 10_000)
   const mixing = within('mixingFactor', known('mixing', room.mixingFactor, mixingFactorOf(null)), 1, 100)
-  const sources = coats.map(({ at, carrier, massGrams, touchDryMinutes, limits }) => {
+  const sources = coats.map(({ at, carrier, massGrams, touchDryMinutes, limits, assumed: stoodIn }) => {
+    for (const input of stoodIn ?? []) known(input, null, 0)
     known('limit', limits.limitMgM3, 0)
     known('explosive limit', limits.lelGramsM3, 0)
     const dryMinutes = known('touch-dry', touchDryMinutes, null)
@@ -70,7 +71,7 @@ function airflowOf({ coats, sources, mixing }: Asked, hours: number): number {
 }
 
 function bandFor({ coats, assumed }: Asked, share: number, fire: FireStage): VapourBand {
-  const unknown: readonly VapourInput[] = ['volume', 'air changes', 'touch-dry', 'limit']
+  const unknown: readonly VapourInput[] = ['volume', 'air changes', 'touch-dry', 'limit', 'area', 'VOC', 'spread rate']
   if (unknown.some(input => assumed.includes(input))) return 'unknown'
   const band = fire === 'stop' ? 'not-here' : bandOf(share)
   // A vapour that a sum does not speak for is never let into a milder band.
@@ -108,7 +109,7 @@ export function roomVapour(room: VentilatedRoom, all: readonly WetCoat[], period
   const healthShare = mixing * scaled(asked, perLimit, mean8hMgM3, air => worstMean(air, workday, 0, lastStart))
   const shortShare = mixing * scaled(asked, perCeiling, peak15MgM3, air => worstPeak(air, 0, period.hours, shortHours).mean)
   const rated = fireStageOf(mixing * lelShare)
-  const fire = rated !== 'stop' && lelShare > 0 && (['volume', 'air changes', 'touch-dry'] as const).some(input => assumed.includes(input)) ? 'unknown' : rated
+  const fire = rated !== 'stop' && lelShare > 0 && (['volume', 'air changes', 'touch-dry', 'area', 'VOC', 'spread rate'] as const).some(input => assumed.includes(input)) ? 'unknown' : rated
   const figure = assumed.every(input => input === 'mixing' || input === 'explosive limit') && coats.every(({ limits }) => limits.textOnly === null)
   return {
     massGrams: coats.reduce((sum, { massGrams }) => sum + massGrams, 0),

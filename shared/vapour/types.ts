@@ -13,7 +13,7 @@ export type FireStage = typeof fireStages[number]
 export const textOnlyReasons = ['skin', 'sensitising', 'carcinogenic'] as const
 export type TextOnlyReason = typeof textOnlyReasons[number]
 
-export const vapourInputs = ['volume', 'air changes', 'mixing', 'touch-dry', 'limit', 'explosive limit'] as const
+export const vapourInputs = ['volume', 'air changes', 'mixing', 'touch-dry', 'limit', 'explosive limit', 'area', 'VOC', 'spread rate'] as const
 export type VapourInput = typeof vapourInputs[number]
 
 /**
@@ -34,6 +34,8 @@ export interface WetCoat {
   massGrams: number
   touchDryMinutes: number | null
   limits: VapourLimits
+  /** Inputs of `massGrams` that nobody gave and a cautious planning value stands in for: they make the band unknown. */
+  assumed?: readonly VapourInput[]
 }
 
 /** A room's air. Every null is "nobody has said" and never lowers a caution. */

@@ -31,7 +31,7 @@ export interface BeginFacts {
 }
 
 /** Who asks. `equipped`: the named maker of the same work, with the exhaust running. */
-export interface Who { role: Role, helperKinds: readonly StepKind[], equipped: boolean }
+export interface Who { role: Role, helperKinds: readonly StepKind[], equipped: boolean, memberId?: number }
 
 export type BeginReason =
   | { code: 'may begin' }

@@ -44,11 +44,16 @@ function readTurn(piece: PieceState, turn: TurnState, where: Whereabouts, now: n
     links: turn.kind === 'work' ? turn.waits : [],
     doubt: films.flatMap(film => film.doubts)[0]?.cause ?? null,
     keepOut: room?.keepOut ? { room: room.name } : null,
-  }, now, heardAt, who)
+  }, now, heardAt, who && { ...who, equipped: who.equipped || goesOn(turn, room?.keepOut?.operatorId ?? null, who) })
   const late = lateness(begin, turn.plan?.lastStartAt ?? null, now)
   const own = films.filter(film => film.step === turn.step.name)
   const state = stepState({ status: turn.step.status, hold: own.find(film => film.hold !== null)?.hold ?? null, doubtful: own.some(film => film.doubts.length > 0), begin, late })
   return { turn, begin, late, state }
+}
+
+/** Whether somebody may go on in a shut room: the one who began there, with the exhaust running, and only with solvent coats. */
+function goesOn({ step }: TurnState, operatorId: number | null, who: Who): boolean {
+  return operatorId !== null && who.memberId === operatorId && step.solventBorne && (step.kind === 'coat' || step.kind === 'glue-up')
 }
 
 /** The next moment of one turn alone, for a list of work: chosen as a piece's own is, without its verdict. */

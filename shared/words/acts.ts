@@ -13,7 +13,6 @@ export const actRefusals = {
   noFilm: 'There is no film on this piece that could be tested.',
   nothingHeld: 'Nothing of this piece is in clamps, press or under weight.',
   beforeStart: 'The time lies before the coat went on.',
-  warmAirOnSolvent: 'No warm air on a solvent film: it feeds the vapour. Let the exhaust do it.',
   noPlace: 'This place is not in this studio.',
   noMaterial: 'This material is not in this studio.',
   corrected: 'This entry has been corrected already. Here is how it stands now.',

@@ -43,6 +43,15 @@ export const callWords = {
     answeredAlready: 'Somebody has answered for these rags already.',
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
   },
+  vapour: {
+    title: (room: string) => `Keep out of ${room}: solvent work begins`,
+    body: (room: string, name: string | null, exhaust: boolean) => `${name ?? 'The bench'} begins solvent work in ${room}. ${exhaust ? 'The exhaust is running.' : 'There is no exhaust: the vapour may spread.'} Flames, pilot lights, heaters and motors stay off there. Phones, tablets and chargers stay out. Follow the product's safety data sheet and your local rules.`,
+    stays: 'This call stays till the room has been opened. Say that you have seen it instead.',
+  },
+  checkRoom: {
+    title: (room: string) => `Time to check ${room}`,
+    body: (room: string, name: string) => `${room} is still shut. Exhaust on? Smell or stinging: stay out. A nose is no guide to all of it. ${name === '' ? 'An owner' : name} looks in and opens it, or leaves it shut.`,
+  },
   notification: {
     coatOn: 'Coat is on',
     stillTacky: 'Still tacky',

@@ -7,5 +7,8 @@ export const roomWords = {
   since: (time: string, name: string | null) => name === null ? `Shut since ${time}. A maker opens it.` : `Shut since ${time}. ${name} opens it, or an owner.`,
   open: (room: string) => `Open ${room}`,
   ask: 'Open it only after looking in yourself, with the exhaust run as the product’s data sheet and local rules ask.',
+  nothingToShut: (room: string) => `${room} was not opened in the last day, so there is nothing to take back.`,
+  shutAgain: (room: string) => `Shut ${room} again`,
+  openedBy: (room: string, name: string | null, time: string) => name === null ? `${room} was opened ${time}.` : `${name} opened ${room} ${time}.`,
   opened: (room: string) => `${room} is open again.`,
 } as const

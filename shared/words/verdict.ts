@@ -56,7 +56,8 @@ function doubtText(cause: DoubtCause, fromAt: number, clock: Clock): string {
   return cause === 'failed' ? `failed a test ${clockTime(fromAt, clock)}` : `something went wrong ${clockTime(fromAt, clock)}`
 }
 
-const intakeHazards = {
+/** What an unanswered question about an old object leaves open. */
+export const intakeHazards = {
   'lead': 'lead not ruled out',
   'green cloth': 'arsenic in green cloth not ruled out',
   'mould': 'mould not ruled out',

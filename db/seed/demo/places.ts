@@ -5,10 +5,10 @@ import type { PlaceKind } from '#shared/terms'
 export type RoomKey = 'bench' | 'workshop' | 'spray' | 'yard'
 
 const rooms = {
-  bench: { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, volumeM3: 96, exhaustM3H: null, nightDropC: 1 },
-  workshop: { name: 'Workshop', heated: false, outdoor: false, sprayArea: false, volumeM3: 140, exhaustM3H: null, nightDropC: 6 },
-  spray: { name: 'Spray room', heated: true, outdoor: false, sprayArea: true, volumeM3: 28, exhaustM3H: 900, nightDropC: 2 },
-  yard: { name: 'Covered yard', heated: false, outdoor: true, sprayArea: false, volumeM3: null, exhaustM3H: null, nightDropC: 6 },
+  bench: { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, volumeM3: 96, exhaustM3H: null, airChangesPerHour: 5, airMoves: 'fan and windows', nightDropC: 1 },
+  workshop: { name: 'Workshop', heated: false, outdoor: false, sprayArea: false, volumeM3: 140, exhaustM3H: null, airChangesPerHour: 2, airMoves: 'windows only', nightDropC: 6 },
+  spray: { name: 'Spray room', heated: true, outdoor: false, sprayArea: true, volumeM3: 28, exhaustM3H: 900, airChangesPerHour: null, airMoves: 'measured fan', nightDropC: 2 },
+  yard: { name: 'Covered yard', heated: false, outdoor: true, sprayArea: false, volumeM3: null, exhaustM3H: null, airChangesPerHour: null, airMoves: null, nightDropC: 6 },
 } as const satisfies Record<RoomKey, unknown>
 
 const placeRows = {

@@ -32,6 +32,8 @@ export interface Start extends Pick<BatchRequest, 'name' | 'pieces'> {
   place: PlaceKey
   order?: { name: string, dueAt: number }
   oldObject?: boolean
+  /** Surface of one piece, m2. */
+  areaM2?: number
 }
 
 export interface Tell {
@@ -74,7 +76,7 @@ export class Player {
     const found = given.schedule === null ? null : db.select({ id: finishingSchedule.id }).from(finishingSchedule).where(scoped(finishingSchedule, studioId, eq(finishingSchedule.libraryKey, given.schedule))).get()
     if (found === undefined) throw new Error(`The library has no schedule ${given.schedule}.`)
     const started = this.#done(given.name, startBatch(db, studioId, { member: people[given.by ?? 'maker'] }, {
-      clientKey: this.key(), name: given.name, scheduleId: found?.id ?? null, pieces: given.pieces, sizeUnits: 1, placeId: places[given.place],
+      clientKey: this.key(), name: given.name, scheduleId: found?.id ?? null, pieces: given.pieces, sizeUnits: 1, areaM2: given.areaM2 ?? 0.08, placeId: places[given.place],
       order: given.order ? { name: given.order.name, dueAt: iso(given.order.dueAt) } : null, startsAt: iso(given.at), oldObject: given.oldObject ?? false,
     }, given.at))
     this.#batches.set(given.name, { pieceIds: started.pieceIds })
@@ -83,11 +85,15 @@ export class Player {
   tell(given: Tell) {
     const { db, studioId, places, people } = this.stage
     const rows = this.#pieces(given.batch, given.pieces)
-    const recorded = this.#done(`${given.batch}, ${given.kind}`, recordAct(db, studioId, { member: people[given.by ?? 'maker'] }, {
+    const request: ActRequest = {
       clientKey: this.key(), kind: given.kind, doneAt: iso(given.at), pieces: rows.map(({ id, version }) => ({ id, version })),
       ...(given.parts ? { partIds: this.#parts(rows.map(row => row.id), given.parts) } : {}),
       body: { ...given.body, ...(given.place ? { placeId: places[given.place] } : {}) },
-    }, toldAt(given)))
+    }
+    const record = (vapour?: ActRequest['vapour']) => recordAct(db, studioId, { member: people[given.by ?? 'maker'] }, { ...request, ...(vapour ? { vapour } : {}) }, toldAt(given))
+    const first = record()
+    const asked = roomsAsked(first)
+    const recorded = this.#done(`${given.batch}, ${given.kind}`, asked ? record({ exhaust: asked.every(room => room.sprayArea) ? 'running' : 'none', flamesOff: true, nobodyElse: true }) : first)
     if (given.label) this.#acts.set(given.label, recorded.actId)
   }
 
@@ -146,6 +152,12 @@ export class Player {
     if (!answer.ok) throw new Error(`The demo's own services refuse "${what}": ${answer.message}`)
     return answer
   }
+}
+
+/** The rooms of which the three questions are asked before solvent work, or null when none are. */
+function roomsAsked(answer: { ok: true } | Refusal): { sprayArea: boolean }[] | null {
+  const current = answer.ok ? null : answer.current as { ask?: unknown, rooms?: { sprayArea: boolean }[] } | undefined
+  return current?.ask === 'vapour' ? current.rooms ?? null : null
 }
 
 /** Coats and glue-ups whose planned start has passed in silence, by batch and step. */

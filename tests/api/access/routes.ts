@@ -61,6 +61,16 @@ export const routes: Record<string, RouteCase> = {
   'rooms/[id].delete.ts': { least: 'maker', apart: 'row', at: 'room' },
   // Nothing is shut in the first studio's room: who may is told so with a conflict.
   'rooms/[id]/open.post.ts': { least: 'maker', apart: 'row', at: 'room', body: () => ({}) },
+  // Nobody has opened it of late: who may is told so with a conflict.
+  'rooms/[id]/shut.post.ts': { least: 'helper', apart: 'row', at: 'room', body: () => ({}) },
+  'vapour.get.ts': { least: 'helper', apart: 'view' },
+  'rules/index.post.ts': { least: 'owner', apart: 'view', body: () => ({ text: 'No spraying after six.' }) },
+  'rules/[id].delete.ts': { least: 'owner', apart: 'row', at: 'rule' },
+  'statements/index.post.ts': { least: 'owner', apart: 'view', body: () => ({ kind: 'isocyanate', text: 'Brushed only, in the booth, with air-fed hood and gloves, one person.' }) },
+  'statements/[id].delete.ts': { least: 'owner', apart: 'row', at: 'statement' },
+  'materials/[id]/limits.put.ts': { least: 'owner', apart: 'row', at: 'material', body: () => ({ solventKey: null, limitMgM3: 350, ceilingMgM3: null, lelGramsM3: null, vocGramsPerLitre: 450, exemptGramsPerLitre: null, spreadM2PerLitre: null, touchDryMinutes: null }) },
+  'batches/[id]/area.put.ts': { least: 'maker', apart: 'row', at: 'batch', body: () => ({ areaM2: 0.4 }) },
+  'reminders/[id]/seen.post.ts': { least: 'helper', apart: 'row', at: 'reminder' },
   'materials/index.get.ts': { least: 'helper', apart: 'view' },
   'materials/[id].get.ts': { least: 'helper', apart: 'row', at: 'material' },
   'week.get.ts': { least: 'helper', apart: 'view' },

@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, subscription: number, material: number, invitationToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, subscription: number, material: number, invitationToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -53,7 +53,9 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const members = await owner.get<{ id: number, role: string }[]>('/api/members')
   const helper = members.body.find(({ role }) => role === 'helper')
   if (!helper) throw new Error('The first studio has no helper.')
-  const batch = await owner.post<{ pieceIds: number[] }>('/api/batches', { clientKey: 'access-first-batch', name: `${marker} ledgers`, scheduleId: null, pieces: [`${marker} 1`], placeId: place.id, order: null, startsAt: now() })
+  const rule = await made(owner, '/api/rules', { text: `${marker} rule` })
+  const statement = await made(owner, '/api/statements', { kind: 'isocyanate', text: `${marker}: brushed only, by one person, with air from outside and gloves.` })
+  const batch = await owner.post<{ batchId: number, pieceIds: number[] }>('/api/batches', { clientKey: 'access-first-batch', name: `${marker} ledgers`, scheduleId: null, pieces: [`${marker} 1`], placeId: place.id, order: null, startsAt: now() })
   const [piece = 0] = batch.body.pieceIds
   const seen = await owner.post<{ actId: number }>('/api/acts', { clientKey: 'access-first-act', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece, version: versionOf(databaseFile, piece) }], body: {} })
   if (seen.status !== 200) throw new Error(`The act was answered with ${seen.status}: ${JSON.stringify(seen.body)}`)
@@ -65,7 +67,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   if (!material) throw new Error('The first studio has no material.')
   const calls = writeCalls(databaseFile, room.id, seen.body.actId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, subscription: subscription.id, material: material.id, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */

@@ -15,7 +15,7 @@ function likelyHandled(zoneName: string, appliedAt: number) {
   if (!started.ok) throw new Error(started.message)
   const [piece] = pieceStates(db, studioId, started.pieceIds)
   if (!piece) throw new Error('no piece')
-  const told = recordAct(db, studioId, { member: studio.members.maker }, { clientKey: 'coat-on-1', kind: 'coat on', doneAt: new Date(appliedAt).toISOString(), pieces: [{ id: piece.id, version: piece.version }], body: { step: null, materialVersionId: studio.materialOf('wiping-varnish') } }, appliedAt)
+  const told = recordAct(db, studioId, { member: studio.members.maker }, { clientKey: 'coat-on-1', kind: 'coat on', doneAt: new Date(appliedAt).toISOString(), pieces: [{ id: piece.id, version: piece.version }], body: { step: null, materialVersionId: studio.materialOf('wiping-varnish') }, vapour: { exhaust: 'none', flamesOff: true, nobodyElse: true } }, appliedAt)
   if (!told.ok) throw new Error(told.message)
   const rung = pieceStates(db, studioId, started.pieceIds)[0]?.groups[0]?.films[0]?.milestones.find(each => each.name === 'dry-to-handle')
   const likelyAt = rung?.likelyAt ?? 0

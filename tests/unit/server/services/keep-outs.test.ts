@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { act, keepOut } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
-import { openRoom } from '~~/server/services/keep-outs'
+import { openRoom, shutAgain } from '~~/server/services/keep-outs'
 import { pieceStates } from '~~/server/services/piece-states'
 import { roomStates } from '~~/server/services/room-states'
 import { hour, minute, testStudio } from '../../../helpers/studio'
@@ -17,7 +17,7 @@ function withShutRoom() {
   const started = startBatch(db, studioId, { member: members.maker }, { clientKey: 'start-one', name: 'Bodies', scheduleId: null, pieces: ['Body 1'], sizeUnits: 1, placeId: places.booth, order: null, startsAt: iso(now - hour), oldObject: false }, now)
   if (!started.ok) throw new Error(started.message)
   const pieces = pieceStates(db, studioId, started.pieceIds).map(({ id, version }) => ({ id, version }))
-  const told = recordAct(db, studioId, { member: members.maker }, { clientKey: 'lacquer-1', kind: 'coat on', doneAt: iso(now - 10 * minute), pieces, body: { step: null, materialVersionId: studio.materialOf('nitrocellulose-lacquer') } }, now)
+  const told = recordAct(db, studioId, { member: members.maker }, { clientKey: 'lacquer-1', kind: 'coat on', doneAt: iso(now - 10 * minute), pieces, body: { step: null, materialVersionId: studio.materialOf('nitrocellulose-lacquer') }, vapour: { exhaust: 'running', flamesOff: true, nobodyElse: true } }, now)
   if (!told.ok) throw new Error(told.message)
   return studio
 }
@@ -25,7 +25,7 @@ function withShutRoom() {
 describe('opening a room that was shut', () => {
   it('ends the keep-out with an act of the one who did it', () => {
     const { db, studioId, members, rooms } = withShutRoom()
-    expect(roomStates(db, studioId, now).find(room => room.id === rooms.spray)?.keepOut).toEqual({ sinceAt: now - 10 * minute, opensBy: 'The maker' })
+    expect(roomStates(db, studioId, now).find(room => room.id === rooms.spray)?.keepOut).toMatchObject({ sinceAt: now - 10 * minute, opensBy: 'The maker', operatorId: members.maker.id })
     expect(openRoom(db, studioId, members.maker, rooms.spray, now)).toEqual({ ok: true })
     expect(roomStates(db, studioId, now).find(room => room.id === rooms.spray)?.keepOut).toBeNull()
     const opened = db.select().from(act).all().find(row => row.kind === 'room opened')
@@ -51,5 +51,25 @@ describe('opening a room that was shut', () => {
     openRoom(db, studioId, members.maker, rooms.spray, now)
     expect(openRoom(db, studioId, members.maker, rooms.spray, now)).toMatchObject({ ok: false, reason: 'conflict' })
     expect(openRoom(db, studioId + 1, members.owner, rooms.spray, now)).toMatchObject({ ok: false, reason: 'absent' })
+  })
+})
+
+describe('taking an opening back', () => {
+  it('shuts the room as if it had not been opened, by anybody, and keeps both acts', () => {
+    const { db, studioId, members, rooms } = withShutRoom()
+    openRoom(db, studioId, members.maker, rooms.spray, now)
+    expect(shutAgain(db, studioId, members.helper, rooms.spray, now + minute)).toEqual({ ok: true })
+    expect(roomStates(db, studioId, now + minute).find(room => room.id === rooms.spray)?.keepOut).toMatchObject({ sinceAt: now - 10 * minute, opensBy: 'The maker' })
+    const opened = db.select().from(act).all().filter(row => row.kind === 'room opened')
+    expect(opened.map(row => [row.memberId, row.voided])).toEqual([[members.maker.id, false], [members.helper.id, true]])
+    expect(openRoom(db, studioId, members.maker, rooms.spray, now + 2 * minute)).toEqual({ ok: true })
+  })
+
+  it('is refused when nothing was opened in the last day, and in another studio', () => {
+    const { db, studioId, members, rooms } = withShutRoom()
+    expect(shutAgain(db, studioId, members.maker, rooms.spray, now)).toMatchObject({ ok: false, reason: 'conflict' })
+    openRoom(db, studioId, members.maker, rooms.spray, now)
+    expect(shutAgain(db, studioId, members.maker, rooms.spray, now + 25 * hour)).toMatchObject({ ok: false, reason: 'conflict' })
+    expect(shutAgain(db, studioId + 1, members.owner, rooms.spray, now)).toMatchObject({ ok: false, reason: 'absent' })
   })
 })

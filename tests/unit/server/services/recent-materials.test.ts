@@ -17,7 +17,7 @@ function withCoats(keys: string[]) {
   if (!started.ok) throw new Error(started.message)
   keys.forEach((key, index) => {
     const pieces = pieceStates(db, studioId, started.pieceIds).map(({ id, version }) => ({ id, version }))
-    const told = recordAct(db, studioId, { member: members.maker }, { clientKey: `coat-on-${index}`, kind: 'coat on', doneAt: iso(now - (keys.length - index) * 5 * minute), pieces, body: { step: null, materialVersionId: studio.materialOf(key) } }, now)
+    const told = recordAct(db, studioId, { member: members.maker }, { clientKey: `coat-on-${index}`, kind: 'coat on', doneAt: iso(now - (keys.length - index) * 5 * minute), pieces, vapour: { exhaust: 'running', flamesOff: true, nobodyElse: true }, body: { step: null, materialVersionId: studio.materialOf(key) } }, now)
     if (!told.ok) throw new Error(told.message)
   })
   return studio

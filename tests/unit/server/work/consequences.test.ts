@@ -20,7 +20,7 @@ function apart() {
   if (!started.ok) throw new Error(started.message)
   const tell = (kind: ActRequest['kind'], at: number, body: ActRequest['body'], partIds?: number[]) => {
     const pieces = pieceStates(studio.db, studio.studioId, started.pieceIds).map(({ id, version }) => ({ id, version }))
-    const told = recordAct(studio.db, studio.studioId, teller, { clientKey: `key-${at}`, kind, doneAt: iso(at), pieces, body, ...(partIds ? { partIds } : {}) }, now)
+    const told = recordAct(studio.db, studio.studioId, teller, { clientKey: `key-${at}`, kind, doneAt: iso(at), pieces, body, vapour: { exhaust: 'running', flamesOff: true, nobodyElse: true }, ...(partIds ? { partIds } : {}) }, now)
     if (!told.ok) throw new Error(told.message)
   }
   const body = studio.db.select().from(part).where(eq(part.key, 'body')).all().map(row => row.id)

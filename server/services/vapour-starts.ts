@@ -1,0 +1,125 @@
+import { and, eq, inArray, isNull } from 'drizzle-orm'
+import { keepOut, material, materialVersion, part, pieceStep, statement, stepTarget, vapourStart } from '~~/db/schema'
+import { memberNames } from '~~/server/services/member-names'
+import { openStarts } from '~~/server/services/vapour-facts'
+import type { StartRow } from '~~/server/services/vapour-facts'
+import type { Transaction } from '~~/server/utils/database'
+import { conflict, impossible } from '~~/server/utils/errors'
+import type { Refusal } from '~~/server/utils/errors'
+import { scoped } from '~~/server/utils/scoped'
+import { roomOfPlace, roomsOfParts } from '~~/server/work/rooms-of-parts'
+import type { RoomRow } from '~~/server/work/rooms-of-parts'
+import type { ActRequest, TellableKind } from '#shared/schemas/act'
+import { isSolventBorne } from '#shared/vapour/facts'
+import { listText } from '#shared/words/group'
+import { startVapour } from '#shared/words/vapour-starts'
+
+/** So long after its answers a session of solvent work in a room goes on without being asked anew, ms (planning value). */
+export const sessionMs = 4 * 60 * 60_000
+
+/** Kinds of act that begin solvent work or say that it was done. */
+const starting: readonly TellableKind[] = ['began', 'coat on', 'glue-up on']
+
+interface Material { name: string | null, solvent: string | null, isocyanate: boolean }
+
+/** The materials an act would put on: of the step named, or named in the act itself. Null material: a film that nobody can name. */
+function materialsOf(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>): Material[] {
+  const pieceIds = request.pieces.map(each => each.id)
+  const steps = typeof body.step === 'string'
+    ? tx.select({ kind: pieceStep.kind, versionId: pieceStep.materialVersionId }).from(pieceStep).where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, pieceIds), eq(pieceStep.key, body.step))).all()
+    : []
+  const films = steps.filter(step => step.kind === 'coat' || step.kind === 'glue-up')
+  if (typeof body.step === 'string' && films.length === 0) return []
+  const versionIds = typeof body.materialVersionId === 'number' ? [body.materialVersionId] : [...new Set(films.map(step => step.versionId))]
+  const known = versionIds.flatMap(id => id ?? [])
+  const rows = known.length === 0 ? [] : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId))
+    .where(scoped(materialVersion, studioId, inArray(materialVersion.id, known))).all()
+  return rows.length < Math.max(1, versionIds.length) ? [...rows, { name: null, solvent: null, isocyanate: false }] : rows
+}
+
+/** The rooms the work is done in: where its parts stand, and where a glue-up goes. */
+function roomsOf(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>): RoomRow[] {
+  const pieceIds = request.pieces.map(each => each.id)
+  const roomOf = roomsOfParts(tx, studioId, pieceIds)
+  const ofStep = typeof body.step === 'string'
+    ? tx.selectDistinct({ partId: stepTarget.partId }).from(pieceStep).innerJoin(stepTarget, eq(stepTarget.stepId, pieceStep.id)).where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, pieceIds), eq(pieceStep.key, body.step))).all().map(row => row.partId)
+    : []
+  const partIds = request.partIds ?? (ofStep.length > 0 ? ofStep : partsOf(tx, studioId, pieceIds))
+  const rows = [...partIds.flatMap(id => roomOf(id) ?? []), ...typeof body.placeId === 'number' ? [roomOfPlace(tx, studioId, body.placeId)].filter(each => each !== null) : []]
+  return [...new Map(rows.map(row => [row.id, row])).values()]
+}
+
+/** Whether the answers given before still stand for a room: the same session with an exhaust that runs or no room to fill; without either only for the coat they were given for. */
+function covers(start: StartRow | undefined, room: RoomRow, kind: TellableKind, now: number): boolean {
+  return start !== undefined && now - start.at < sessionMs && (start.exhaust === 'running' || room.outdoor || kind !== 'began')
+}
+
+/** What is asked of solvent work: where, and what is still to be answered. Null when the act is none. */
+function solventWork(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>) {
+  if (!starting.includes(request.kind)) return null
+  const materials = materialsOf(tx, studioId, request, body)
+  return { materials, solvent: materials.some(each => isSolventBorne(each.solvent)), rooms: () => roomsOf(tx, studioId, request, body) }
+}
+
+/**
+ * Refuses solvent work where somebody sleeps, in a room that is shut for whoever asks, and without the three answers; and isocyanate without the
+ * owner's statement. Nobody's role and no setting lets it through.
+ */
+export function refuseVapour(tx: Transaction, studioId: number, memberId: number | null, request: ActRequest, body: Record<string, unknown>, now: number): Refusal | null {
+  const work = solventWork(tx, studioId, request, body)
+  if (!work) return null
+  const harmful = work.materials.find(each => each.isocyanate)
+  if (harmful && !hasStatement(tx, studioId)) return impossible(startVapour.isocyanate(harmful.name ?? ''))
+  const rooms = request.kind === 'began' || work.solvent ? work.rooms() : []
+  const shut = request.kind === 'began' ? findShut(tx, studioId, memberId, rooms, work.solvent) : null
+  if (shut) return conflict(startVapour.keepOut(shut.room, shut.opener), { keepOut: shut.roomId })
+  if (!work.solvent) return null
+  const bedroom = rooms.find(each => each.sleptIn)
+  if (bedroom) return impossible(startVapour.sleptIn(bedroom.name))
+  const starts = openStarts(tx, studioId)
+  const asked = rooms.filter(each => !covers(starts.get(each.id), each, request.kind, now))
+  if (asked.length === 0) return null
+  if (!request.vapour) return conflict(startVapour.ask(listText(asked.map(each => each.name))), { ask: 'vapour', rooms: asked.map(({ id, name, outdoor, sprayArea }) => ({ id, name, outdoor, sprayArea })) })
+  if (!request.vapour.flamesOff) return impossible(startVapour.flamesOn)
+  return request.vapour.nobodyElse ? null : impossible(startVapour.somebodyThere)
+}
+
+const partsOf = (tx: Transaction, studioId: number, pieceIds: readonly number[]) =>
+  tx.select({ id: part.id }).from(part).where(scoped(part, studioId, inArray(part.pieceId, [...pieceIds]), isNull(part.intoPartId))).all().map(row => row.id)
+
+const hasStatement = (tx: Transaction, studioId: number) => tx.select({ id: statement.id }).from(statement).where(scoped(statement, studioId, eq(statement.kind, 'isocyanate'), isNull(statement.withdrawnAt))).get() !== undefined
+
+/** A shut room that is not this person's to go on in: only the named maker of the same work, with the exhaust running, may. */
+function findShut(tx: Transaction, studioId: number, memberId: number | null, rooms: readonly RoomRow[], solvent: boolean) {
+  const shut = tx.select().from(keepOut).where(and(scoped(keepOut, studioId), isNull(keepOut.openedAt))).all()
+  const starts = openStarts(tx, studioId)
+  for (const room of rooms) {
+    const line = shut.find(each => each.roomId === room.id)
+    if (!line) continue
+    const equipped = solvent && memberId !== null && line.opensByMemberId === memberId && starts.get(room.id)?.exhaust === 'running'
+    if (!equipped) return { roomId: room.id, room: room.name, opener: memberNames(tx, studioId).get(line.opensByMemberId ?? 0) ?? '' }
+  }
+  return null
+}
+
+/** Writes down the answers that came with an act, for each room that they were asked for. Without an exhaust they stand for this one coat. */
+export function noteStart(tx: Transaction, studioId: number, memberId: number | null, request: ActRequest, body: Record<string, unknown>, actId: number, now: number) {
+  const work = solventWork(tx, studioId, request, body)
+  if (!work?.solvent) return
+  const starts = openStarts(tx, studioId)
+  for (const room of work.rooms()) {
+    const start = starts.get(room.id)
+    const covered = covers(start, room, request.kind, now)
+    if (!covered && request.vapour) {
+      const { exhaust, flamesOff, nobodyElse } = request.vapour
+      if (start) end(tx, studioId, room.id, now)
+      tx.insert(vapourStart).values({ studioId, roomId: room.id, actId, at: now, memberId, exhaust, flamesOff, nobodyElse, endedAt: request.kind !== 'began' && exhaust === 'none' && !room.outdoor ? now : null }).run()
+    }
+    else if (covered && start && start.exhaust === 'none' && request.kind !== 'began') end(tx, studioId, room.id, now)
+  }
+}
+
+/** Ends every start of a room: it was opened, or its one coat is on. */
+export function end(tx: Transaction, studioId: number, roomId: number, now: number) {
+  tx.update(vapourStart).set({ endedAt: now }).where(and(scoped(vapourStart, studioId, eq(vapourStart.roomId, roomId)), isNull(vapourStart.endedAt))).run()
+}
