@@ -36,15 +36,16 @@ async function readAll(request: IncomingMessage) {
   return Buffer.concat(parts)
 }
 
-/** A push service of the test's own on loopback. `answer` gives the status by path, 201 by default, when it gets round to it. */
-export async function pushService(answer: (path: string) => number | Promise<number> = () => 201) {
+/** A push service of the test's own on loopback. `answer` gives the status by path and message, 201 by default, when it gets round to it. */
+export async function pushService(answer: (path: string, text: string) => number | Promise<number> = () => 201) {
   const browser = pushBrowser()
   const received: ReceivedPush[] = []
   const server = createServer((request, response) => {
     void readAll(request).then(async (message) => {
       const path = request.url ?? ''
-      received.push({ path, headers: request.headers, text: message.length > 0 ? browser.read(message) : '' })
-      const status = await answer(path)
+      const text = message.length > 0 ? browser.read(message) : ''
+      received.push({ path, headers: request.headers, text })
+      const status = await answer(path, text)
       response.writeHead(status, status >= 300 && status < 400 ? { location: '/elsewhere' } : {}).end()
     })
   })

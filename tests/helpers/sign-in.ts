@@ -45,9 +45,9 @@ export async function signIn(origin: string, email: string, password = testPassw
 }
 
 /** Makes the first studio of an empty server and returns its owner, signed in. */
-export async function firstStudio(origin: string, name = 'Fir Lane'): Promise<Visitor> {
+export async function firstStudio(origin: string, name = 'Fir Lane', zone = 'Europe/London'): Promise<Visitor> {
   const owner = visitor(origin)
-  const { status } = await owner.post('/api/studios', { name, zone: 'Europe/London', person: { name: 'Wren', email: 'wren@example.test', password: testPassword } })
+  const { status } = await owner.post('/api/studios', { name, zone, person: { name: 'Wren', email: 'wren@example.test', password: testPassword } })
   if (status !== 200) throw new Error(`Making the first studio was answered with ${status}.`)
   return owner
 }
