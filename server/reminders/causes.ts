@@ -1,3 +1,4 @@
+import { grouped } from '#shared/grouped'
 import { clockTime, localDate, roughTime } from '#shared/time'
 import { callWords } from '#shared/words/calls'
 import { lastOpenMoment, nightAfter } from './hours'
@@ -29,11 +30,7 @@ interface Group { key: string, first: PlannedTurn, turns: PlannedTurn[], failedT
 
 /** The group key survives a new plan: it names the step, the turn, the branch and the act of the oldest film under it. */
 function groupTurns(turns: readonly PlannedTurn[]): Group[] {
-  const groups = new Map<string, PlannedTurn[]>()
-  for (const turn of turns) {
-    const key = JSON.stringify([turn.batchId, turn.branchId, turn.stepKey, turn.ordinal, turn.sessionId])
-    groups.set(key, [...groups.get(key) ?? [], turn])
-  }
+  const groups = grouped(turns, turn => JSON.stringify([turn.batchId, turn.branchId, turn.stepKey, turn.ordinal, turn.sessionId]))
   return [...groups.values()].flatMap((members) => {
     const [first] = members
     if (!first) return []

@@ -1,6 +1,7 @@
 import { and, eq, isNull, sql } from 'drizzle-orm'
 import { closure, openHours, ragDuty, room, studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
+import { grouped } from '#shared/grouped'
 import type { StepKind, TurnKind } from '#shared/terms'
 import { startOfLocalDay, studioZone } from '#shared/time'
 import type { StudioZone } from '#shared/time'
@@ -98,8 +99,8 @@ function readTurns(db: Database, studioId: number, now: number): PlannedTurn[] {
       and t.status = 'waiting' and s.status in ('waiting', 'doing', 'resting') and p.gone_at is null and b.closed_at is null
     order by e.due_at, p.ordinal, t.id`)
   const films = readFilms(db, studioId)
-  const parts = rows.length === 0 ? new Map<number, number[]>() : readParts(db, studioId)
-  return rows.map(row => ({ ...row, afterTest: Boolean(row.afterTest), after: newest((parts.get(row.stepId) ?? []).map(part => films.get(part))) }))
+  const parts = rows.length === 0 ? null : readParts(db, studioId)
+  return rows.map(row => ({ ...row, afterTest: Boolean(row.afterTest), after: newest((parts?.get(row.stepId) ?? []).map(({ partId }) => films.get(partId))) }))
 }
 
 interface Film { coatId: number, actId: number, failedTests: number }
@@ -114,13 +115,11 @@ function readFilms(db: Database, studioId: number): Map<number, Film> {
   return new Map(rows.map(row => [row.partId, row]))
 }
 
-function readParts(db: Database, studioId: number): Map<number, number[]> {
+function readParts(db: Database, studioId: number) {
   const rows = db.all<{ stepId: number, partId: number }>(sql`
     select distinct g.step_id as stepId, g.part_id as partId from piece_step s join step_target g on g.step_id = s.id
     where s.studio_id = ${studioId} and s.status in ('waiting', 'doing', 'resting', 'set aside')`)
-  const parts = new Map<number, number[]>()
-  for (const { stepId, partId } of rows) parts.set(stepId, [...parts.get(stepId) ?? [], partId])
-  return parts
+  return grouped(rows, row => row.stepId)
 }
 
 function newest(films: (Film | undefined)[]) {

@@ -5,6 +5,7 @@ import { placeStates, roomStates } from '~~/server/services/room-states'
 import type { StudioRow } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { grouped } from '#shared/grouped'
 import { openSpans } from '#shared/open-hours'
 import type { PieceState, SessionState, StudioState } from '#shared/schemas/piece-state'
 import { addDays, fromLocal, localDate, startOfLocalDay, studioZone } from '#shared/time'
@@ -40,13 +41,8 @@ function hoursToday(db: Database, owner: StudioRow, now: number) {
 function sessionStates(db: Database, studioId: number, pieces: readonly PieceState[]): SessionState[] {
   const rows = db.select({ session: planSession }).from(plan).innerJoin(planSession, eq(planSession.planId, plan.id))
     .where(scoped(plan, studioId, sql`${plan.current} = 1`, eq(planSession.studioId, studioId))).orderBy(asc(planSession.startsAt)).all().map(row => row.session)
-  const turns = new Map<number, { turnId: number, pieceId: number, lastStartAt: number | null, firstFew: number | null, lastStartFewAt: number | null }[]>()
-  for (const piece of pieces) {
-    for (const turn of piece.turns) {
-      if (!turn.plan || turn.plan.sessionId === null) continue
-      turns.set(turn.plan.sessionId, [...turns.get(turn.plan.sessionId) ?? [], { turnId: turn.turnId, pieceId: piece.id, lastStartAt: turn.plan.lastStartAt, firstFew: turn.plan.firstFew, lastStartFewAt: turn.plan.lastStartFewAt }])
-    }
-  }
+  const planned = pieces.flatMap(piece => piece.turns.flatMap(turn => turn.plan ? [{ ...turn.plan, turnId: turn.turnId, pieceId: piece.id }] : []))
+  const turns = grouped(planned, turn => turn.sessionId)
   return rows.flatMap((row) => {
     const members = turns.get(row.id) ?? []
     const first = members[0]

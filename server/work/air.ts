@@ -1,9 +1,10 @@
-import { and, asc, desc, eq, gte, lt } from 'drizzle-orm'
+import { and, asc, eq, gte, sql } from 'drizzle-orm'
 import { reading, room } from '~~/db/schema'
 import type { studio } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import type { Reading, RoomAir } from '#shared/drying/types'
+import { grouped } from '#shared/grouped'
 
 type Reader = Database | Transaction
 type StudioRow = typeof studio.$inferSelect
@@ -14,7 +15,8 @@ const patternReach = 7 * 24 * 60 * 60_000
 /** What is known of the air of every room of a studio, from some time before `since` (ms UTC) on. */
 export function roomAirs(db: Reader, owner: StudioRow, since: number): Map<number, RoomAir> {
   const rooms = db.select().from(room).where(scoped(room, owner.id)).all()
-  return new Map(rooms.map(each => [each.id, { ...airOf(owner), heated: each.heated && !each.outdoor, nightDropC: each.nightDropC, readings: readingsOf(db, owner.id, each.id, since) }]))
+  const readings = readingsOf(db, owner.id, since)
+  return new Map(rooms.map(each => [each.id, { ...airOf(owner), heated: each.heated && !each.outdoor, nightDropC: each.nightDropC, readings: readings.get(each.id) ?? [] }]))
 }
 
 /** The air where nobody has said anything: the studio's usual climate, flagged as assumed. */
@@ -22,9 +24,11 @@ export function airOf(owner: StudioRow): RoomAir {
   return { readings: [], heated: true, nightDropC: 0, zone: owner.zone, usual: { tempC: owner.usualTempC, rh: owner.usualRh } }
 }
 
-function readingsOf(db: Reader, studioId: number, roomId: number, since: number): Reading[] {
+/** Every room's readings in order, with the last one before those that are asked for: until the next, it still says how the air is. */
+function readingsOf(db: Reader, studioId: number, since: number): Map<number, Reading[]> {
   const from = since - patternReach
-  const before = db.select().from(reading).where(and(scoped(reading, studioId, eq(reading.roomId, roomId)), lt(reading.at, from))).orderBy(desc(reading.at)).limit(1).all()
-  const after = db.select().from(reading).where(and(scoped(reading, studioId, eq(reading.roomId, roomId)), gte(reading.at, from))).orderBy(asc(reading.at)).all()
-  return [...before, ...after].map(({ at, tempC, rh, doubt }) => ({ at, tempC, rh, doubt }))
+  const lastBefore = sql`(select max(earlier.at) from reading earlier where earlier.room_id = ${room.id} and earlier.at < ${from})`
+  const rows = db.select({ roomId: reading.roomId, at: reading.at, tempC: reading.tempC, rh: reading.rh, doubt: reading.doubt }).from(room)
+    .innerJoin(reading, and(eq(reading.roomId, room.id), gte(reading.at, sql`coalesce(${lastBefore}, ${from})`))).where(scoped(room, studioId)).orderBy(asc(reading.roomId), asc(reading.at)).all()
+  return new Map([...grouped(rows, row => row.roomId)].map(([roomId, own]) => [roomId, own.map(({ at, tempC, rh, doubt }) => ({ at, tempC, rh, doubt }))]))
 }
