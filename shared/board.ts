@@ -15,7 +15,7 @@ import { betterText } from '#shared/words/verdict'
 export interface Standing { piece: ReadPiece, groups: ReadGroup[], verdict: Verdict, name: string, suffix: string, whole: boolean }
 
 /** A swatch of the drawing: a piece, or several alike beside one another drawn once. */
-export interface BoardCell extends StandingPiece { pieceIds: number[], count: number, clamps: number, pieceName: string, suffix: string }
+export interface BoardCell extends StandingPiece { pieceIds: number[], count: number, clamps: number }
 
 export interface BoardPlace { id: number, name: string, kind: string, drawn: 'shelf' | 'rail' | 'clamps', note: string, free: number, cells: BoardCell[], unfolded: boolean }
 
@@ -60,7 +60,7 @@ function momentOf({ piece, verdict, whole }: Standing, clock: Clock): Pick<Stand
 export function standingCell(standing: Standing, clock: Clock): BoardCell {
   const { piece, verdict, name, suffix } = standing
   return {
-    key: piece.piece.id, name: name + suffix, pieceName: name, suffix, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock),
+    key: piece.piece.id, name: name + suffix, pieceName: name, suffix, series: piece.piece.batch.id, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock),
     ...momentOf(standing, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
   }
 }

@@ -4,7 +4,7 @@ import { addDays, clockTime, fromLocal, localDate, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { aboutToShutMs } from '#shared/verdict/begin'
 import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
-import { boardWords, dayNote, dueSince, morePegs, startByText } from '#shared/words/board'
+import { boardWords, dayNote, dueSince, startByText } from '#shared/words/board'
 import { groupNames } from '#shared/words/group'
 import { stepNoun } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
@@ -91,16 +91,6 @@ function ragPegs(state: StudioState, clock: Clock): DayPeg[] {
     .map(each => ({ key: `rags ${each.id}`, at: clock.now, title: boardWords.rags(each.room), says: boardWords.ragsAsk, urgent: true }))
 }
 
-/** The ruler holds so many; what presses and what comes first have the places, the rest shares one. */
-const mostPegs = 8
-
-function fewest(pegs: readonly DayPeg[]): DayPeg[] {
-  if (pegs.length <= mostPegs) return [...pegs]
-  const ordered = [...pegs].sort((a, b) => Number(b.urgent) - Number(a.urgent) || a.at - b.at)
-  const rest = ordered.slice(mostPegs - 1)
-  return [...ordered.slice(0, mostPegs - 1), { key: 'more', at: Math.min(...rest.map(each => each.at)), urgent: false, ...morePegs(rest.length) }]
-}
-
 /** What needs hands today, from the plan's sessions, checks, rags and the end of the day. */
 export function dayPlan(state: StudioState, pieces: readonly ReadPiece[], clock: Clock): DayPlan {
   const { now, zone } = clock
@@ -108,7 +98,7 @@ export function dayPlan(state: StudioState, pieces: readonly ReadPiece[], clock:
   const closesAt = state.hours.filter(each => each.closesAt > now).at(-1)?.closesAt ?? null
   const byTurn = new Map(pieces.flatMap(piece => piece.turns.map((turn): [number, Member] => [turn.turn.turnId, { piece, turn }])))
   const inSession = new Set(state.sessions.flatMap(session => session.turnIds))
-  const work = fewest([...ragPegs(state, clock), ...sessionPegs(state, byTurn, clock, midnight), ...checkPegs(pieces, inSession, clock, midnight)])
+  const work = [...ragPegs(state, clock), ...sessionPegs(state, byTurn, clock, midnight), ...checkPegs(pieces, inSession, clock, midnight)]
   const leave: DayPeg[] = closesAt === null ? [] : [{ key: 'leave', at: Math.max(now, closesAt - hour / 4), title: boardWords.leave, says: state.rags.length > 0 ? boardWords.ragsOut : boardWords.lids, urgent: false }]
   const pegs = [...work, ...leave]
   const toAt = Math.min(midnight, Math.max(closesAt ?? now + 3 * hour, ...pegs.map(each => each.at + hour / 4)))

@@ -4,6 +4,11 @@ import type { VerdictKind } from '#shared/verdict/types'
 export interface StandingPiece {
   key: string | number
   name: string
+  /** The name without the parts that stand here, and those parts. */
+  pieceName: string
+  suffix: string
+  /** The batch it belongs to. */
+  series: number
   /** Share of the way to dry, 0..1; null when nobody knows. */
   dry: number | null
   kind: VerdictKind

@@ -102,7 +102,7 @@ export function partsSuffix(parts: readonly string[]): string {
 }
 
 /** The rest of the day's work, in one peg. */
-export const morePegs = (count: number) => ({ title: `${count} more`, says: 'Hands has them all' })
+export const morePegs = (count: number) => `${count} more in Hands`
 
 /** "until 17:30; 2 h 10 min of work". */
 export function dayNote(closesAt: number | null, minutes: number, clock: Clock): string {

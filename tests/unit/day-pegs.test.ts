@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { dayPlan } from '#shared/day-pegs'
+import { fitPegs } from '#shared/day-ruler'
 import type { PieceState, TurnState } from '#shared/schemas/piece-state'
 import { at, clockAt, groupState, noon, pieceState, readAll, studioWith } from '../helpers/board'
 
@@ -33,12 +34,15 @@ describe('the day ruler', () => {
     expect(titles(at(11.75))).toEqual(['Before you leave: rags dealt with?'])
     expect(titles(at(11.5))).toEqual(['Rags, Front bench: where are they?', 'Before you leave: rags dealt with?'])
   })
-  it('puts what does not fit into one peg', () => {
-    const pieces = Array.from({ length: 12 }, (_, i) => withTurn(i + 1, { kind: 'check', name: `Check ${i + 1}`, wantedAt: at(13 + i / 4) }))
-    const state = studioWith(pieces)
-    // Eight have room: seven and one for the other five, at the time of the eighth, 13:00 + 7 quarters.
-    const { pegs } = dayPlan(state, readAll(state, noon), clock)
-    expect(pegs).toHaveLength(9)
-    expect(pegs.find(({ key }) => key === 'more')).toMatchObject({ title: '5 more', at: at(14.75) })
+  it('lays what presses and then what comes first, as many as two rows hold, and counts the rest', () => {
+    // Each peg is 11 * 7.6 + 32 = 115.6 px wide on a ruler of 240 px, so a row holds two at the most; all stand at one instant, where a row holds one.
+    const peg = (key: number, urgent = false) => ({ key, at: at(13 + key / 100), title: `Check ${key} of 5`, says: '', urgent })
+    const { pegs, more } = fitPegs([peg(1), peg(2), peg(3), peg(4, true)], () => 0, 240)
+    expect(pegs.map(each => each.peg.key)).toEqual([1, 4])
+    expect(more).toBe(2)
+  })
+  it('lays all where there is room', () => {
+    const pegs = [1, 2, 3].map(key => ({ key, at: key, title: 'Sand', says: '', urgent: false }))
+    expect(fitPegs(pegs, at => at / 4, 1000)).toMatchObject({ more: 0, pegs: [{ place: { row: 0 } }, { place: { row: 0 } }, { place: { row: 0 } }] })
   })
 })

@@ -1,0 +1,36 @@
+import type { StandingPiece } from '#shared/shelf'
+import { groupNames } from '#shared/words/group'
+
+/** Swatches beside one another in one row. Where they say the same of one batch, the words stand under them once. */
+export interface SwatchRun<Swatch extends StandingPiece = StandingPiece> { key: string | number, swatches: Swatch[], caption: string | null }
+
+/** A grid has so many column spans ready; a longer run begins again. */
+export const longestRun = 12
+
+function saysTheSame(a: StandingPiece, b: StandingPiece): boolean {
+  return a.series === b.series && a.suffix === b.suffix && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone
+}
+
+/**
+ * Cuts a row of swatches into runs, none over the end of a row.
+ * @param columns swatches that fit beside one another, at least 1
+ */
+export function swatchRuns<Swatch extends StandingPiece>(swatches: readonly Swatch[], columns: number): SwatchRun<Swatch>[] {
+  const runs: Swatch[][] = []
+  swatches.forEach((swatch, index) => {
+    const last = runs.at(-1)
+    const first = last?.[0]
+    const joins = last && first && last.length < longestRun && index % columns !== 0 && (first.count ?? 1) === 1 && (swatch.count ?? 1) === 1 && saysTheSame(first, swatch)
+    if (joins) last.push(swatch)
+    else runs.push([swatch])
+  })
+  return runs.flatMap((run) => {
+    const [first] = run
+    return first ? [{ key: first.key, swatches: run, caption: run.length > 1 ? groupNames(run.map(each => each.pieceName)) + first.suffix : null }] : []
+  })
+}
+
+/** What tells a swatch from its neighbours when the caption has named the series: the figure its name ends on, else the name. */
+export function shortName(name: string): string {
+  return /\s(\d{1,6})$/.exec(name)?.[1] ?? name
+}
