@@ -11,6 +11,7 @@ export const weekWords = {
   waiting: 'Fetching the week',
   failed: 'The week could not be fetched.',
   load: 'Load against what there is',
+  sideways: 'The later days are to the right: move the table sideways.',
   resource: 'What',
   people: 'People',
   today: 'today',
@@ -65,14 +66,15 @@ function daysText(days: readonly WeekDay[], fromAll: number): string {
 }
 
 /** The sentence at the top: what is full and when, or what comes nearest. It says what is, never what would change it. */
-export function fullestSentence(found: Fullest | null, days: readonly WeekDay[], people: string): { head: string, rest: string } {
+export function fullestSentence(found: Fullest | null, days: readonly WeekDay[]): { head: string, rest: string } {
   if (!found) return { head: 'Nothing is taken up this week.', rest: '' }
   const when = daysText(found.days.flatMap(index => days[index] ?? []), days.length)
-  const amount = found.name === people ? `${hoursText(found.used)} of ${hoursText(found.of)}` : `${found.used} of ${found.of}`
-  const is = single.has(found.name) ? 'is' : 'are'
-  if (found.share > 1) return { head: `${found.name} ${is} over full ${when}.`, rest: `At the worst ${amount}: something must stand elsewhere.` }
+  const amount = found.isPeople ? `${hoursText(found.used)} of ${hoursText(found.of)}` : `${found.used} of ${found.of}`
+  const isOne = found.isOne || single.has(found.name)
+  const is = isOne ? 'is' : 'are'
+  if (found.share > 1) return { head: `${found.name} ${is} over full ${when}.`, rest: `At the worst ${amount}: ${found.isPeople ? 'somebody else must do it, or it waits' : 'something must stand elsewhere'}.` }
   if (isFull(found)) return { head: `${found.name} ${is} full ${when}.`, rest: found.share < 1 ? `At the most ${amount}.` : `That is ${amount}.` }
-  return { head: 'Nothing is full this week.', rest: `${found.name} ${single.has(found.name) ? 'comes' : 'come'} nearest ${when}: ${amount}.` }
+  return { head: 'Nothing is full this week.', rest: `${found.name} ${isOne ? 'comes' : 'come'} nearest ${when}: ${amount}.` }
 }
 
 /** A lateness no finer than anybody plans by: hours under a day, then half days. */
@@ -82,6 +84,16 @@ function lateText(ms: number): string {
   if (hours < 24) return `${Math.round(hours)} h`
   const days = Math.round(hours / 12) / 2
   return days === 1 ? '1 day' : `${days} days`
+}
+
+/** "2 of 8 batches are planned past their date; Ferry cover the furthest: 12 days late." Null when none is. */
+export function lateSentence(batches: readonly BatchLoad[]): string | null {
+  const lateness = ({ endsAt, dueAt }: BatchLoad) => (endsAt ?? 0) - (dueAt ?? 0)
+  const late = batches.filter(each => standingOf(each) === 'late').sort((a, b) => lateness(b) - lateness(a))
+  const [worst] = late
+  if (!worst) return null
+  const is = late.length === 1 ? 'is' : 'are'
+  return `${late.length} of ${batches.length === 1 ? '1 batch' : `${batches.length} batches`} ${is} planned past ${late.length === 1 ? 'its' : 'their'} date${late.length === 1 ? ': ' : '; the furthest is '}${worst.name}, ${lateText(lateness(worst))} late.`
 }
 
 export type Standing = 'late' | 'near' | 'in time' | 'no date' | 'no time' | 'done'

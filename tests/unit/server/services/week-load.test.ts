@@ -6,11 +6,12 @@ import { weekLoad } from '~~/server/services/week-load'
 import { peak } from '~~/server/services/week-places'
 import type { Use } from '~~/server/services/week-places'
 import { fullest } from '#shared/fullest'
-import { fullestSentence, placeKindsText, standingOf, standingText } from '#shared/words/week'
+import { fullestSentence, lateSentence, placeKindsText, standingOf, standingText } from '#shared/words/week'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday at ten, in UTC.
 const now = Date.parse('2026-04-07T10:00:00Z')
+const day = 24 * hour
 
 async function studioWith(schedule: string | null, count: number, dueAt: number | null = null) {
   const studio = testStudio(now)
@@ -90,7 +91,7 @@ describe('the sentence at the top', () => {
   const days = [{ date: '2026-04-07', weekday: 2, today: true, closed: null }, { date: '2026-04-08', weekday: 3, today: false, closed: null }]
   const load = (used: number, of: number) => ({ used, of, away: false })
   const week = (clamps: number[], people = 0) => ({ people: [{ memberId: null, name: '', days: [load(people, 600), load(people, 600)] }], places: [{ kind: 'clamps' as const, capacity: 8, days: clamps.map(used => load(used, 8)) }] })
-  const says = (clamps: number[], people = 0) => Object.values(fullestSentence(fullest(week(clamps, people), 'People', placeKindsText), days, 'People')).join(' ')
+  const says = (clamps: number[], people = 0) => Object.values(fullestSentence(fullest(week(clamps, people), 'People', placeKindsText), days)).join(' ')
   it('names what is full and when', () => {
     expect(says([4, 8])).toBe('Clamps are full on Wednesday. That is 8 of 8.')
     expect(says([8, 8])).toBe('Clamps are full on every day shown. That is 8 of 8.')
@@ -102,6 +103,17 @@ describe('the sentence at the top', () => {
   })
   it('does not hide what does not fit', () => {
     expect(says([9, 3])).toBe('Clamps are over full today. At the worst 9 of 8: something must stand elsewhere.')
+  })
+  it('names one person who has more than the hours, though all together have room', () => {
+    const people = [{ memberId: null, name: '', days: [load(600, 1200), load(0, 1200)] }, { memberId: 1, name: 'Oda', days: [load(600, 540), load(0, 600)] }, { memberId: 2, name: 'Bo', days: [load(0, 660), load(0, 600)] }]
+    // 600 of 540 min is 10 h of 9 h.
+    expect(Object.values(fullestSentence(fullest({ people, places: [] }, 'People', placeKindsText), days)).join(' ')).toBe('Oda is over full today. At the worst 10 h of 9 h: somebody else must do it, or it waits.')
+  })
+  it('counts the batches planned past their dates, and names the furthest', () => {
+    const batch = { id: 1, name: 'Ledgers', pieces: 2, order: null, beganAt: 0, dueAt: 10 * day, endsAt: 12 * day, latestAt: null, left: 3, without: 0 }
+    expect(lateSentence([{ ...batch, endsAt: 9 * day }, { ...batch, dueAt: null }])).toBeNull()
+    expect(lateSentence([batch, { ...batch, endsAt: 9 * day }])).toBe('1 of 2 batches is planned past its date: Ledgers, 2 days late.')
+    expect(lateSentence([batch, { ...batch, name: 'Trays', endsAt: 13 * day }])).toBe('2 of 2 batches are planned past their date; the furthest is Trays, 3 days late.')
   })
   it('says nothing of an empty week', () => {
     expect(says([0, 0])).toBe('Nothing is taken up this week. ')
