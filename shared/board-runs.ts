@@ -1,8 +1,8 @@
 import type { StandingPiece } from '#shared/shelf'
 import { groupNames } from '#shared/words/group'
 
-/** Swatches beside one another in one row. Where they say the same of one batch, the words stand under them once. */
-export interface SwatchRun<Swatch extends StandingPiece = StandingPiece> { key: string | number, swatches: Swatch[], caption: string | null }
+/** Swatches beside one another in one row. Where they say the same of one batch, the words stand under them once and each has a short label. */
+export interface SwatchRun<Swatch extends StandingPiece = StandingPiece> { key: string | number, swatches: Swatch[], caption: string | null, labels: string[] }
 
 /** A grid has so many column spans ready; a longer run begins again. */
 export const longestRun = 12
@@ -26,11 +26,14 @@ export function swatchRuns<Swatch extends StandingPiece>(swatches: readonly Swat
   })
   return runs.flatMap((run) => {
     const [first] = run
-    return first ? [{ key: first.key, swatches: run, caption: run.length > 1 ? groupNames(run.map(each => each.pieceName)) + first.suffix : null }] : []
+    const names = run.map(each => each.pieceName)
+    return first ? [{ key: first.key, swatches: run, caption: run.length > 1 ? groupNames(names) + first.suffix : null, labels: run.length > 1 ? shortNames(names) : [] }] : []
   })
 }
 
-/** What tells a swatch from its neighbours when the caption has named the series: the figure its name ends on, else the name. */
-export function shortName(name: string): string {
-  return /\s(\d{1,6})$/.exec(name)?.[1] ?? name
+/** What tells swatches apart when the caption has named the series: the rest of each name after the words all begin with. */
+export function shortNames(names: readonly string[]): string[] {
+  const words = names.map(name => name.split(' '))
+  const shared = (words[0] ?? []).findIndex((word, index) => words.some(each => each[index] !== word || each.length === index + 1))
+  return words.map(each => each.slice(Math.max(0, shared)).join(' '))
 }

@@ -50,6 +50,7 @@ export const pieceWords = {
   save: 'Correct it',
   corrected: (fact: string) => `Corrected: ${fact}.`,
   tookBack: (fact: string) => `Taken back: ${fact}.`,
+  beneath: (count: number) => count === 1 ? '1 layer beneath' : `${count} layers beneath`,
   earlier: (count: number) => `${count} earlier acts`,
   stepsPast: (count: number) => `${count} steps are done or left out`,
   dryThrough: (count: number) => count === 1 ? '1 more is dry through' : `${count} more are dry through`,

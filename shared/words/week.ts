@@ -41,13 +41,14 @@ export const weekdayText = (weekday: number) => longDays[weekday - 1] ?? ''
 /** "closed", "closed: fair", null on a working day. */
 export const closedText = ({ closed }: WeekDay) => closed === null ? null : closed === '' ? 'closed' : `closed: ${closed}`
 
-const hoursText = (minutes: number) => `${Number((minutes / 60).toFixed(minutes < 600 ? 1 : 0))} h`
+const hoursFigure = (minutes: number) => Number((minutes / 60).toFixed(minutes < 600 ? 1 : 0))
+const hoursText = (minutes: number) => `${hoursFigure(minutes)} h`
 
-/** Inside a person's tray: "3.5 h of 8 h", "closed", "away", "off", "nothing planned". */
+/** Inside a person's tray: "3.5 of 8 h", "closed", "away", "off", "nothing planned". */
 export function personText(load: Load, day: WeekDay): string {
   if (load.of === 0 && load.used === 0) return day.closed !== null ? 'closed' : load.away ? 'away' : day.today ? 'over' : 'off'
   if (load.of === 0) return `${hoursText(load.used)}, out of hours`
-  return load.used === 0 ? `free, ${hoursText(load.of)}` : `${hoursText(load.used)} of ${hoursText(load.of)}`
+  return load.used === 0 ? `free, ${hoursText(load.of)}` : `${hoursFigure(load.used)} of ${hoursText(load.of)}`
 }
 
 /** Inside a place's tray: "5 of 8", "8 of 8, full", "9 of 8, 1 too many", "free". */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { shortName, swatchRuns } from '#shared/board-runs'
+import { shortNames, swatchRuns } from '#shared/board-runs'
 import type { StandingPiece } from '#shared/shelf'
 
 const swatch = (no: number, changes: Partial<StandingPiece> = {}): StandingPiece => ({ key: no, name: `Ledger ${no}, cover`, pieceName: `Ledger ${no}`, suffix: ', cover', series: 1, dry: 1, kind: 'may be handled', verdict: 'may be handled', moment: 'sand lightly', tone: 'open', ...changes })
@@ -17,7 +17,10 @@ describe('runs of swatches', () => {
     expect(said([swatch(1), swatch(2, { count: 3 })], 6)).toHaveLength(2)
     expect(said(Array.from({ length: 13 }, (_, index) => swatch(index + 1)), 20).map(([length]) => length)).toEqual([12, 1])
   })
-  it('tells one from another by the figure its name ends on', () => {
-    expect(['Ledger 12', 'Ledger 4, the tall one', 'Chest'].map(shortName)).toEqual(['12', 'Ledger 4, the tall one', 'Chest'])
+  it('tells one from another by what follows the words they share', () => {
+    expect(shortNames(['Ledger 12', 'Ledger 4, the tall one'])).toEqual(['12', '4, the tall one'])
+    expect(shortNames(['Chest', 'Chest of oak', 'Box'])).toEqual(['Chest', 'Chest of oak', 'Box'])
+    // One name may be the beginning of another: its last word stays.
+    expect(shortNames(['Tide box', 'Tide box 2'])).toEqual(['box', 'box 2'])
   })
 })
