@@ -25,6 +25,25 @@ function factOf({ kind, body, step, material }: Telling): string {
 
 const problemOf = (error: unknown) => (error instanceof FetchError && typeof error.data?.data?.message === 'string' ? error.data.data.message as string : toldWords.notReached)
 
+/**
+ * Follows the taps that wait on this device: told late, one stands as any other from then on.
+ * @returns what takes one off the device again, without a word to the studio
+ */
+function lateTaps(told: ReturnType<typeof useToldStore>) {
+  const untold = useUntoldStore()
+  watch(() => untold.arrived, (arrived) => {
+    for (const line of told.lines) {
+      const actId = line.clientKey === null ? undefined : arrived[line.clientKey]
+      if (actId !== undefined) told.change(line.key, { state: 'told', clientKey: null, actId, rootId: actId })
+    }
+  })
+  return (line: ToldLine) => {
+    if (line.clientKey === null) return
+    untold.drop(line.clientKey)
+    told.change(line.key, { state: 'undone', clientKey: null })
+  }
+}
+
 function makeTelling(studio: Studio) {
   const { tell, correct, busy } = useActs()
   const told = useToldStore()
@@ -45,8 +64,8 @@ function makeTelling(studio: Studio) {
     const base = { kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds, step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt }
     const before = wets(telling.kind) ? null : effectNow({ ...base, rootId: null })
     const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds)
-    const blank = { ...base, actId: null, rootId: null, effect: '', before, problem: null }
-    if (answer.outcome === 'later') return told.add({ ...blank, state: 'later' })
+    const blank = { ...base, clientKey: null, actId: null, rootId: null, effect: '', before, problem: null }
+    if (answer.outcome === 'later') return told.add({ ...blank, state: 'later', clientKey: answer.clientKey })
     if (answer.outcome === 'refused') return told.add({ ...blank, state: 'refused', problem: Object.values(answer.fields)[0] ?? answer.message })
     const line = { ...blank, state: 'told' as const, actId: answer.actId, rootId: answer.actId }
     const { effect, now } = describe(line)
@@ -77,7 +96,7 @@ function makeTelling(studio: Studio) {
     await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material })
   }
 
-  return { say, again, busy, told, undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
+  return { say, again, dropLater: lateTaps(told), busy, told, undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
 }
 
 type TellingOnPage = ReturnType<typeof makeTelling> & { studio: Studio }

@@ -16,6 +16,8 @@ export interface ToldLine {
   names: string
   doneAt: number
   state: 'told' | 'later' | 'refused' | 'undone'
+  /** The key it waits under on this device while it is not told. */
+  clientKey: string | null
   /** The act that now stands for it; another after each correction. */
   actId: number | null
   /** The first act of its corrections: films are known by it. */

@@ -2,20 +2,23 @@ import { defineStore } from 'pinia'
 import { FetchError } from 'ofetch'
 import type { ActRequest } from '#shared/schemas/act'
 
-const shelf = 'stillwet untold'
+const shelves = { acts: 'stillwet untold', refused: 'stillwet refused' } as const
 /** An act without an answer for so long counts as not told yet: telling it twice under its key records it once. ms. */
 const answerMs = 15_000
+
+/** A tap that the studio refused when it came through late, with its sentence. */
+export interface RefusedAct { act: ActRequest, message: string }
 
 /** What came of telling an act. `later`: not reached; it is kept on this device and told as soon as it can be. */
 export type Told =
   | { outcome: 'told', actId: number }
-  | { outcome: 'later' }
+  | { outcome: 'later', clientKey: string }
   | { outcome: 'refused', message: string, fields: Record<string, string>, current: unknown }
 
-function readShelf(): ActRequest[] {
+function readShelf<Kept>(shelf: string): Kept[] {
   try {
     const kept: unknown = JSON.parse(localStorage.getItem(shelf) ?? '[]')
-    return Array.isArray(kept) ? kept as ActRequest[] : []
+    return Array.isArray(kept) ? kept as Kept[] : []
   }
   catch {
     return []
@@ -32,12 +35,24 @@ function refusalOf(error: unknown): Extract<Told, { outcome: 'refused' }> | null
 /** Acts that this device has not been able to tell yet: nothing tapped is ever lost, not to a dead spot nor to a closed page. */
 export const useUntoldStore = defineStore('untold', () => {
   const acts = ref<ActRequest[]>([])
-  const refused = ref<{ act: ActRequest, message: string }[]>([])
+  const refused = ref<RefusedAct[]>([])
+  /** What became of acts that were told late: the studio's number of each, by client key. */
+  const arrived = ref<Record<string, number>>({})
 
-  const keep = () => localStorage.setItem(shelf, JSON.stringify(acts.value))
+  function keep() {
+    localStorage.setItem(shelves.acts, JSON.stringify(acts.value))
+    localStorage.setItem(shelves.refused, JSON.stringify(refused.value))
+  }
 
-  function drop(act: ActRequest) {
-    acts.value = acts.value.filter(each => each.clientKey !== act.clientKey)
+  /** Takes a tap that is not told yet off the device. */
+  function drop(clientKey: string) {
+    acts.value = acts.value.filter(each => each.clientKey !== clientKey)
+    keep()
+  }
+
+  /** Puts a late refusal away once somebody has read it. */
+  function dismiss(clientKey: string) {
+    refused.value = refused.value.filter(each => each.act.clientKey !== clientKey)
     keep()
   }
 
@@ -47,13 +62,13 @@ export const useUntoldStore = defineStore('untold', () => {
     keep()
     try {
       const { actId } = await callApi<{ actId: number }>('/api/acts', { method: 'POST', body: act, timeout: answerMs })
-      drop(act)
+      drop(act.clientKey)
       return { outcome: 'told', actId }
     }
     catch (error) {
       const refusal = refusalOf(error)
-      if (!refusal) return { outcome: 'later' }
-      drop(act)
+      if (!refusal) return { outcome: 'later', clientKey: act.clientKey }
+      drop(act.clientKey)
       return refusal
     }
   }
@@ -63,13 +78,16 @@ export const useUntoldStore = defineStore('untold', () => {
     for (const act of [...acts.value]) {
       const told = await tell(act)
       if (told.outcome === 'later') return
-      if (told.outcome === 'refused') refused.value = [...refused.value, { act, message: told.message }]
+      if (told.outcome === 'told') arrived.value = { ...arrived.value, [act.clientKey]: told.actId }
+      else refused.value = [...refused.value, { act, message: told.message }]
     }
+    keep()
   }
 
   function start() {
-    acts.value = readShelf()
+    acts.value = readShelf<ActRequest>(shelves.acts)
+    refused.value = readShelf<RefusedAct>(shelves.refused)
   }
 
-  return { acts, refused, tell, tellAll, start }
+  return { acts, refused, arrived, tell, tellAll, drop, dismiss, start }
 })

@@ -147,6 +147,8 @@ export const toldWords = {
   leave: 'Leave it',
   next: (moment: string) => `Next: ${moment}.`,
   notReached: 'The studio was not reached. Nothing has changed; try again in a moment.',
+  drop: 'Take back',
+  dropLabel: (fact: string, names: string) => `Take back: ${fact}, ${names}`,
   untold: (count: number) => (count === 1 ? 'One tap is not told yet.' : `${count} taps are not told yet.`),
   untoldSays: 'They are kept on this device and told in their order as soon as the studio is reached.',
   tellNow: 'Tell them now',

@@ -195,6 +195,32 @@ describe('the hands screen', () => {
     expect(filmsOf(await piecesOf('Trough'))).toHaveLength(1)
   })
 
+  it('takes a tap back that is not told yet, and keeps a late refusal until it is put away', async () => {
+    await startBatch('Pestle', 2)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    await page.route('**/api/acts', route => route.abort())
+    const job = jobOf(page, 'First paint on the lid top', 'Pestles 1 and 2: lid')
+    await job.getByRole('button', { name: 'Coat is on' }).click()
+    await told(page).getByText('It is kept on this device').waitFor()
+    await told(page).getByRole('button', { name: 'Undo' }).click()
+    await page.getByText('One tap is not told yet.').waitFor({ state: 'detached' })
+    await job.getByRole('button', { name: 'Coat is on' }).click()
+    await page.getByText('One tap is not told yet.').waitFor()
+    // Somebody else is first meanwhile, so that the tap is refused when it comes through.
+    const pieces = (await piecesOf('Pestle')).map(({ id, version }) => ({ id, version }))
+    await made(helper, '/api/acts', { clientKey: 'seen-pestles-of-test', kind: 'seen', doneAt: new Date().toISOString(), pieces, body: {} })
+    await page.unroute('**/api/acts')
+    await page.getByRole('button', { name: 'Tell them now' }).click()
+    const refusal = page.getByText(/^Pestles 1 and 2: /)
+    await refusal.waitFor()
+    await page.reload()
+    await refusal.waitFor()
+    await page.getByRole('button', { name: 'Leave it' }).first().click()
+    await refusal.waitFor({ state: 'detached' })
+    expect(filmsOf(await piecesOf('Pestle'))).toHaveLength(0)
+  })
+
   it('is worked by the keyboard alone', async () => {
     await startBatch('Panel', 1)
     const { page } = await openPage(browser, server.origin, {}, maker)
