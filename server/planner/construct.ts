@@ -1,17 +1,22 @@
 import { Board } from './board'
 import { nameFixed } from './clash'
 import { placeUnit } from './placeUnit'
+import { Seat } from './seat'
 import type { Session } from './board'
 import type { Model } from './model'
 import type { Unit } from './units'
 import type { Conflict, PlanEntry, PlanSession } from '#shared/planning/types'
 
+/** A board with everything on it that has a place. */
+export interface Layout { readonly board: Board, seats: Seat[], readonly conflicts: Conflict[] }
+
 /** One way to do it all, not yet judged. */
 export interface Draft { entries: PlanEntry[], sessions: PlanSession[], conflicts: Conflict[] }
 
-function draftOf(board: Board, conflicts: Conflict[]): Draft {
+/** What lies on the board, in the plan's words. */
+export function draftOf({ board, conflicts }: Layout): Draft {
   const { problem } = board.model
-  const used = board.sessions
+  const used = [...board.sessions]
   const number = new Map<Session, number>(used.map((session, i) => [session, i]))
   const pinned = new Map(problem.fixed.map(fixed => [fixed.activity, fixed]))
   const entries = problem.activities.flatMap((activity, i): PlanEntry[] => {
@@ -23,8 +28,8 @@ function draftOf(board: Board, conflicts: Conflict[]): Draft {
     }]
   })
   const sessions = used.map(session => ({
-    family: problem.families[session.family]!.id, start: session.start, end: session.end,
-    activities: session.members.map(member => problem.activities[member]!.id), resources: session.mode.chosen,
+    family: problem.families[session.family]!.id, start: session.start, end: session.now!.end,
+    activities: session.now!.members.map(member => problem.activities[member]!.id), resources: session.mode.chosen,
   }))
   return { entries, sessions, conflicts }
 }
@@ -34,22 +39,29 @@ function draftOf(board: Board, conflicts: Conflict[]): Draft {
  * free some; when none of those left gets further, they keep what can be placed and the rest is named as a conflict.
  * Null when asked to stop before the end.
  */
-export function construct(model: Model, order: readonly Unit[], floors: Int32Array | null, shouldStop: () => boolean): Draft | null {
+export function construct(model: Model, order: readonly Unit[], floors: Int32Array | null, shouldStop: () => boolean): Layout | null {
   const board = new Board(model)
-  const conflicts = nameFixed(board)
-  let waiting = order
+  const layout: Layout = { board, seats: [], conflicts: nameFixed(board) }
+  return fillIn(layout, order.map(unit => new Seat(board, unit)), floors, shouldStop) ? layout : null
+}
+
+/** Places seats on a board that may hold others already. False when asked to stop before the end. */
+export function fillIn(layout: Layout, seats: readonly Seat[], floors: Int32Array | null, shouldStop: () => boolean): boolean {
+  let waiting = seats
   for (let drop = false; waiting.length > 0;) {
-    const later: Unit[] = []
+    const later: Seat[] = []
     let advanced = false
-    for (const unit of waiting) {
-      if (shouldStop()) return null
-      const result = placeUnit(board, unit, drop, floors)
+    for (const seat of waiting) {
+      if (shouldStop()) return false
+      const result = placeUnit(seat, drop, floors)
+      layout.seats.push(...result.seats)
       later.push(...result.later)
-      conflicts.push(...result.conflicts)
+      layout.conflicts.push(...result.conflicts)
+      layout.board.settle()
       advanced ||= result.later.length === 0
     }
     drop = !advanced
     waiting = later
   }
-  return draftOf(board, conflicts)
+  return true
 }

@@ -11,16 +11,19 @@ export interface Cause { readonly node: number, readonly edge: Edge | null, read
 /** `blame`: what last pushed the failed node later, if anything; it is the real clash. */
 export interface Failure { readonly cause: Cause, readonly blame: Cause | null }
 
-type Step = { readonly kind: 'placed' } | { readonly kind: 'later', readonly node: number, readonly from: number, readonly cause: Cause } | { readonly kind: 'failed', readonly cause: Cause }
+export type Step = { readonly kind: 'placed' } | { readonly kind: 'later', readonly node: number, readonly from: number, readonly cause: Cause } | { readonly kind: 'failed', readonly cause: Cause }
 
 const placed: Step = { kind: 'placed' }
 
 /** More pushes than any sound plan needs; past it the clash counts as one that cannot be resolved. */
 const mostPushes = 4000
 
+const noWindows: ReadonlySet<Edge> = new Set()
+const noNodes: ReadonlySet<number> = new Set()
+
 /** Waits allowed by an edge; one whose window is given up lies past its last one. */
 function waitsOf(attempt: Attempt, edge: Edge) {
-  return attempt.missed.has(edge) ? Int32Array.of(edge.waits.at(-1)! + 1, never) : edge.waits
+  return attempt.missed.has(edge) ? edge.past : edge.waits
 }
 
 /**
@@ -36,41 +39,64 @@ export class Attempt {
   readonly blame: (Cause | null)[]
   /** Where each overrun edge first counted from: its window as people would name it. */
   readonly origin = new Map<Edge, number>()
+  missed = noWindows
+  dropped = noNodes
+  private readonly logged: Int32Array
+  private readonly changed: Int32Array
 
-  constructor(readonly board: Board, readonly unit: Unit, readonly missed: ReadonlySet<Edge>, readonly dropped: ReadonlySet<number>, floors: Int32Array | null = null) {
+  constructor(readonly board: Board, readonly unit: Unit) {
     const size = unit.nodes.length
     this.start = new Int32Array(size)
     this.length = new Int32Array(size)
-    this.bound = Int32Array.from(unit.nodes, node => node.members.reduce((least, activity, i) => Math.max(least, floors ? floors[activity]! - node.starts[i]! : 0), node.earliest))
+    this.bound = new Int32Array(size)
     this.on = new Uint8Array(size)
     this.blame = unit.nodes.map(() => null)
+    this.logged = new Int32Array(size)
+    this.changed = new Int32Array(size)
+  }
+
+  /** Nothing placed; `floors` by activity are starts that nothing begins before. */
+  begin(floors: Int32Array | null = null, missed = noWindows, dropped = noNodes): void {
+    const { nodes } = this.unit
+    this.missed = missed
+    this.dropped = dropped
+    this.origin.clear()
+    this.on.fill(0)
+    for (let k = 0; k < nodes.length; k++) {
+      const { earliest, members, starts } = nodes[k]!
+      let least = earliest
+      if (floors) for (let i = 0; i < members.length; i++) least = Math.max(least, floors[members[i]!]! - starts[i]!)
+      this.bound[k] = least
+      this.blame[k] = null
+    }
   }
 
   /** Null when every node that is not dropped has its place; else nothing is left on the board. */
-  run(): Failure | null {
-    const order = this.unit.nodes.map((_, i) => i).filter(i => !this.dropped.has(i))
-    const marks = order.map(() => this.board.mark())
-    const first = this.board.mark()
+  run(floors: Int32Array | null = null, missed = noWindows, dropped = noNodes): Failure | null {
+    this.begin(floors, missed, dropped)
+    const { board } = this
+    const [logged, changed] = [board.logged, board.changed]
     let pushes = 0
     let pushed: Cause | null = null
-    for (let at = 0; at < order.length;) {
-      marks[at] = this.board.mark()
-      const step = this.placeNode(order[at]!)
+    for (let at = 0; at < this.on.length;) {
+      this.logged[at] = board.logged
+      this.changed[at] = board.changed
+      const step = dropped.has(at) ? placed : this.placeNode(at)
       if (step.kind === 'placed') {
         at++
         continue
       }
-      const tooLate = step.kind === 'later' && (step.from > this.board.model.problem.horizon || ++pushes > mostPushes)
+      const tooLate = step.kind === 'later' && (step.from > board.model.problem.horizon || ++pushes > mostPushes)
       if (step.kind === 'failed' || tooLate) {
-        this.board.undo(first)
+        board.undo(logged, changed)
         return { cause: step.cause, blame: step.kind === 'failed' ? this.blame[step.cause.node] ?? this.outOfTime(step.cause, pushed) : step.cause }
       }
       this.bound[step.node] = Math.max(this.bound[step.node]!, step.from)
       this.blame[step.node] = step.cause
       pushed = step.cause
-      const back = Math.min(at, order.indexOf(step.node))
-      this.board.undo(marks[back]!)
-      for (let i = back; i <= at; i++) this.on[order[i]!] = 0
+      const back = Math.min(at, step.node)
+      board.undo(this.logged[back]!, this.changed[back]!)
+      this.on.fill(0, back, at + 1)
       at = back
     }
     return null
@@ -81,33 +107,48 @@ export class Attempt {
     return cause.edge === null && cause.resource === null ? pushed : null
   }
 
-  private placeNode(k: number): Step {
-    const node = this.unit.nodes[k]!
-    const before = this.board.mark()
+  /** Places one node after those before it; when it cannot, the board is as it was. */
+  placeNode(k: number): Step {
+    const { board } = this
+    const [logged, changed] = [board.logged, board.changed]
     this.giveBack(k)
-    const extra = this.unit.into[k]!.reduce((sum, edge) => sum + (this.missed.has(edge) ? edge.recovery!.minutes : 0), 0)
-    const recovered = this.unit.into[k]!.some(edge => this.missed.has(edge))
+    const step = this.tryNode(k)
+    if (step.kind !== 'placed') board.undo(logged, changed)
+    return step
+  }
+
+  private tryNode(k: number): Step {
+    const node = this.unit.nodes[k]!
+    let extra = 0
+    let recovered = false
+    if (this.missed.size > 0) {
+      for (const edge of this.unit.into[k]!) {
+        if (!this.missed.has(edge)) continue
+        extra += edge.recovery!.minutes
+        recovered = true
+      }
+    }
     for (let from = this.bound[k]!; ;) {
-      const window = this.windowsFrom(k, from)
-      if ('kind' in window) return this.leave(before, window)
-      const spot = seek(this.board, node, window.from, window.latest, extra)
-      if (!spot) return this.leave(before, { kind: 'failed', cause: { node: k, edge: null, resource: null } })
+      const stopped = this.windowsFrom(k, from)
+      if (stopped) return stopped
+      const opens = this.opens
+      const spot = seek(this.board, node, opens, this.latest, extra)
+      if (!spot) return { kind: 'failed', cause: { node: k, edge: null, resource: null } }
       from = spot.start
-      if (from > window.from) continue
-      const step = this.commit(k, { ...spot, recovered })
-      if (typeof step !== 'number') return step.kind === 'placed' ? step : this.leave(before, step)
-      if (step > this.board.model.problem.horizon) return this.leave(before, { kind: 'failed', cause: { node: k, edge: null, resource: null } })
+      if (from > opens) continue
+      spot.recovered = recovered
+      const step = this.commit(k, spot)
+      if (typeof step !== 'number') return step
+      if (step > this.board.model.problem.horizon) return { kind: 'failed', cause: { node: k, edge: null, resource: null } }
       from = step
     }
   }
 
-  private leave(mark: ReturnType<Board['mark']>, step: Step): Step {
-    this.board.undo(mark)
-    return step
-  }
+  private opens = 0
+  private latest = 0
 
-  /** Earliest start of at least `from` inside a window of every edge from what already has a place. */
-  private windowsFrom(k: number, from: number): { from: number, latest: number } | Step {
+  /** Earliest start of at least `from` inside a window of every edge from what already has a place: `opens`, and how late it may be, `latest`. */
+  private windowsFrom(k: number, from: number): Step | null {
     let latest = never
     for (let i = 0; i < this.unit.into[k]!.length; i++) {
       const edge = this.unit.into[k]![i]!
@@ -124,7 +165,9 @@ export class Attempt {
         i = -1
       }
     }
-    return { from, latest }
+    this.opens = from
+    this.latest = latest
+    return null
   }
 
   private overrun(k: number, edge: Edge, origin: number, from: number): Step {
@@ -138,16 +181,16 @@ export class Attempt {
   private commit(k: number, spot: Spot): Step | number {
     const outward = this.edgesOut(k, spot)
     if (outward !== null) return outward
-    const mark = this.board.mark()
+    const [logged, changed] = [this.board.logged, this.board.changed]
     this.start[k] = spot.start
     this.length[k] = spot.length
-    this.board.place(this.unit.nodes[k]!, spot)
+    this.board.place(this.unit, this.unit.nodes[k]!, spot)
     const step = this.restsInto(k) ?? this.restsOutOf(k)
     if (step === null) {
       this.on[k] = 1
       return placed
     }
-    this.board.undo(mark)
+    this.board.undo(logged, changed)
     return step
   }
 

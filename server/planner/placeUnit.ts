@@ -1,10 +1,12 @@
 import { nameClash, nameFollower } from './clash'
-import { Attempt } from './place'
+import { Seat } from './seat'
 import { splitUnit } from './units'
-import type { Board } from './board'
 import type { Failure } from './place'
 import type { Edge, Unit } from './units'
 import type { Conflict } from '#shared/planning/types'
+
+/** `seats`: units with a place; `later`: to be tried again when others are placed (a place may come free). */
+export interface Placing { seats: Seat[], later: Seat[], conflicts: Conflict[] }
 
 /** A window that may be given up and still is asked for. */
 function givesWay(failure: Failure, missed: ReadonlySet<Edge>): Edge | null {
@@ -26,41 +28,55 @@ function withFollowers(unit: Unit, node: number, dropped: Set<number>): number[]
   return found
 }
 
+/** Places a unit of one piece; windows that cannot be met are given up and their recovery is put in. False: no place even so. */
+export function placeSoftly(seat: Seat, floors: Int32Array | null): boolean {
+  let failure = seat.place(floors)
+  if (!failure) return true
+  if (seat.unit.components.length > 1) return false
+  const missed = new Set<Edge>()
+  while (failure) {
+    const edge = givesWay(failure, missed)
+    if (!edge) return false
+    missed.add(edge)
+    failure = seat.place(floors, missed)
+  }
+  return true
+}
+
 /**
  * Places one unit. Pieces that cannot keep their windows together are placed in halves, one whose window cannot be met gives it up and gets
  * its recovery, and, only with `drop`, what has no place at all stays without one and its conflict is named.
  * `floors`: starts it keeps to if that is possible; no activity then begins before its own.
- * @returns units to try again when others are placed (a place may come free), and the conflicts.
  */
-export function placeUnit(board: Board, unit: Unit, drop: boolean, floors: Int32Array | null = null): { later: Unit[], conflicts: Conflict[] } {
-  if (floors && new Attempt(board, unit, new Set(), new Set(), floors).run() === null) return { later: [], conflicts: [] }
+export function placeUnit(seat: Seat, drop: boolean, floors: Int32Array | null = null): Placing {
+  const { board, unit } = seat
+  if (floors && seat.place(floors) === null) return { seats: [seat], later: [], conflicts: [] }
   const missed = new Set<Edge>()
   const dropped = new Set<number>()
   const conflicts: Conflict[] = []
   for (;;) {
-    const attempt = new Attempt(board, unit, missed, dropped)
-    const failure = attempt.run()
+    const failure = seat.place(null, missed, dropped)
     if (!failure) break
     if (unit.components.length > 1) {
-      const parts = splitUnit(board.model, unit).map(part => placeUnit(board, part, drop, floors))
-      return { later: parts.flatMap(part => part.later), conflicts: parts.flatMap(part => part.conflicts) }
+      const parts = splitUnit(board.model, unit).map(part => placeUnit(new Seat(board, part), drop, floors))
+      return { seats: parts.flatMap(part => part.seats), later: parts.flatMap(part => part.later), conflicts: parts.flatMap(part => part.conflicts) }
     }
     const edge = givesWay(failure, missed)
     if (edge) missed.add(edge)
     else if (!drop) {
-      clear(board, unit)
-      return { later: [unit], conflicts: [] }
+      clear(seat)
+      return { seats: [], later: [seat], conflicts: [] }
     }
     else {
       const victim = (failure.blame ?? failure.cause).node
-      conflicts.push(nameClash(attempt, failure))
+      conflicts.push(nameClash(seat.attempt, failure))
       for (const node of withFollowers(unit, victim, dropped).slice(1)) conflicts.push(nameFollower(board, unit, node, victim))
     }
   }
   for (const node of dropped) for (const activity of unit.nodes[node]!.members) board.placed[activity] = 0
-  return { later: [], conflicts }
+  return { seats: [seat], later: [], conflicts }
 }
 
-function clear(board: Board, unit: Unit): void {
+function clear({ board, unit }: Seat): void {
   for (const node of unit.nodes) for (const activity of node.members) board.placed[activity] = 0
 }

@@ -13,7 +13,7 @@ export class Profile {
   /** Unit minutes booked, for choosing the less busy of two. */
   load = 0
 
-  constructor(capacity: number) {
+  constructor(capacity: number, readonly id = 0) {
     this.times[0] = ever
     this.free[0] = capacity
   }

@@ -94,16 +94,17 @@ function fitMode(board: Board, node: UnitNode, mode: Mode, from: number, length:
 /** Can the session's hands and room stay for this node too? Returns the start, or null. */
 function fitJoin(board: Board, node: UnitNode, session: Session, from: number, length: number): number | null {
   const family = board.model.problem.families[session.family]!
-  const start = family.mode === 'together' ? session.workStart : session.workEnd
+  const now = session.now!
+  const start = family.mode === 'together' ? session.workStart : now.workEnd
   if (start < from) return null
-  const workEnd = Math.max(session.workEnd, start + length)
-  if (family.maxMembers !== null && session.members.length + node.members.length > family.maxMembers) return null
+  const workEnd = Math.max(now.workEnd, start + length)
+  if (family.maxMembers !== null && now.members.length + node.members.length > family.maxMembers) return null
   if (family.maxMinutes !== null && workEnd - session.workStart > family.maxMinutes) return null
   const { open } = session.mode
   const end = workEnd + node.cleanup
   const closes = open[openingAfter(open, session.start) + 1] ?? -1
   if ((node.mayRunOver ? start + mustBeOpen(node, length) : end) > closes || end > board.model.problem.horizon) return null
-  if (capacityFit(board, session.mode, session.end, end - session.end) !== session.end) return null
+  if (capacityFit(board, session.mode, now.end, end - now.end) !== now.end) return null
   return apartFit(board, node, start, length) === start ? start : null
 }
 

@@ -21,8 +21,8 @@ export interface UnitNode {
   readonly splittable: boolean
 }
 
-/** Allowed waits from the end of one node (or minute 0) to the start of another (or minute 0: then minus the end). */
-export interface Edge { readonly from: number, readonly to: number, readonly waits: Waits, readonly recovery: Recovery | null, readonly lag: number }
+/** Allowed waits from the end of one node (or minute 0) to the start of another (or minute 0: then minus the end); `past`: once the last of them is missed. */
+export interface Edge { readonly from: number, readonly to: number, readonly waits: Waits, readonly past: Waits, readonly recovery: Recovery | null, readonly lag: number }
 export interface UnitRest { readonly from: number, readonly to: number, readonly members: readonly CompiledRest[] }
 
 /** Pieces that go through their work together, one alone at least. */
@@ -102,7 +102,7 @@ function makeEdges({ model, nodes, parts, place }: Frame): Edge[] | null {
     const from = place.get(links[0]!.from) ?? none
     const to = place.get(links[0]!.to) ?? none
     const waits = combine(model, links, nodes[from] ?? null, nodes[to] ?? null)
-    edges.push({ from, to, waits, recovery: parts.length === 1 ? recovery : null, lag })
+    edges.push({ from, to, waits, past: Int32Array.of(Math.min(never, (waits.at(-1) ?? 0) + 1), never), recovery: parts.length === 1 ? recovery : null, lag })
   }
   parts[0]!.lags.forEach((first, k) => add(parts.map(part => model.lags[part.lags[k]!]!), model.lags[first]!.recovery, first))
   parts[0]!.rests.forEach((first, k) => {
@@ -113,7 +113,7 @@ function makeEdges({ model, nodes, parts, place }: Frame): Edge[] | null {
 }
 
 /** A unit of these pieces, or null when they cannot go together. */
-function makeUnit(model: Model, parts: readonly Component[]): Unit | null {
+export function makeUnit(model: Model, parts: readonly Component[]): Unit | null {
   const nodes = parts[0]!.activities.map((_, i) => makeNode(model, Int32Array.from(parts, part => part.activities[i]!)))
   if (!nodes.every(node => fits(model, node))) return null
   const place = new Map(parts[0]!.activities.map((activity, i) => [activity, i]))

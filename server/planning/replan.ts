@@ -1,25 +1,30 @@
 import { lastStartsOf } from '~~/server/planning/last-starts'
 import { missedWindows } from '~~/server/planning/missed-windows'
 import { readPlanFacts } from '~~/server/planning/facts'
+import type { PlanFacts } from '~~/server/planning/facts'
 import { studioProblem } from '~~/server/planning/problem'
-import { clearPlan, isCurrent, storePlan } from '~~/server/planning/store-plan'
+import type { StudioProblem } from '~~/server/planning/problem'
+import { clearPlan, isCurrent, revisionOf, storePlan } from '~~/server/planning/store-plan'
 import { minutesFrom, WaitsToCome } from '~~/server/planning/waits'
 import { solve } from '~~/server/planner/solve'
 import { tellingListener } from '~~/server/reminders/wanted'
 import { change } from '~~/server/utils/change'
 import type { Database } from '~~/server/utils/database'
 import { usePlanRunner } from '~~/server/utils/planRunner'
-import type { PlanResult } from '~~/server/utils/planRunner'
+import type { PlanResult, RunOptions } from '~~/server/utils/planRunner'
 import { check } from '#shared/planning/check'
-import type { PlanProblem } from '#shared/planning/types'
+import type { Plan, PlanProblem } from '#shared/planning/types'
 
 /** Solves a problem somewhere: in the worker, or at once where a test or a seed wants to wait for nothing. */
-export type Solver = (key: string, problem: PlanProblem) => Promise<PlanResult>
+export type Solver = (key: string, problem: PlanProblem, onFirst: NonNullable<RunOptions['onFirst']>) => Promise<PlanResult>
 
 /** In this thread and without a wait: for tests, and for filling an empty studio. */
-export const atOnce: Solver = (_key, problem) => Promise.resolve({ ok: true, plan: solve(problem, { schedules: 12 }) })
+export const atOnce: Solver = (_key, problem) => {
+  const plan = solve(problem, { schedules: 12 })
+  return Promise.resolve({ ok: true, plan, broken: check(problem, plan) })
+}
 
-const inWorker: Solver = (key, problem) => usePlanRunner().run(key, problem)
+const inWorker: Solver = (key, problem, onFirst) => usePlanRunner().run(key, problem, { onFirst })
 
 /** `stale`: the studio changed while it was being planned, and a newer plan is on its way. */
 export type Replanned = { ok: true, planned: number } | { ok: false, reason: 'stale' | 'no studio' | 'not solved' | 'not legal', message: string }
@@ -39,16 +44,26 @@ export async function replan(db: Database, studioId: number, now: number, solver
     tellingListener(db, studioId, now)
     return { ok: true, planned: 0 }
   }
-  const solved = await solver(String(studioId), given.problem)
-  if (!solved.ok) return { ok: false, reason: solved.reason === 'superseded' ? 'stale' : 'not solved', message: solved.message }
-  const broken = check(given.problem, solved.plan)
-  if (broken.length > 0) return { ok: false, reason: 'not legal', message: `The plan of studio ${studioId} breaks ${broken.length} rules: ${JSON.stringify(broken.slice(0, 3))}` }
-  const lastStarts = lastStartsOf(solved.plan, given, facts, minutesFrom(given.zeroAt, now, Math.floor))
-  const stored = change(db, studioId, 'plan', (tx) => {
-    if (!isCurrent(tx, facts)) return null
-    return storePlan(tx, facts, given, solved.plan, lastStarts, now)
+  const store = (plan: Plan) => keep(db, facts, given, plan, now)
+  // A studio without a plan gets the first one at once; one with a plan sees only what is better.
+  const solved = await solver(String(studioId), given.problem, (first, broken) => {
+    if (facts.last.length === 0 && broken.length === 0) store(first)
   })
-  if (stored === null) return { ok: false, reason: 'stale', message: 'The studio changed meanwhile.' }
+  if (!solved.ok) return { ok: false, reason: solved.reason === 'superseded' ? 'stale' : 'not solved', message: solved.message }
+  const { plan, broken } = solved
+  if (broken.length > 0) return { ok: false, reason: 'not legal', message: `The plan of studio ${studioId} breaks ${broken.length} rules: ${JSON.stringify(broken.slice(0, 3))}` }
+  if (!store(plan)) return { ok: false, reason: 'stale', message: 'The studio changed meanwhile.' }
+  return { ok: true, planned: plan.entries.length }
+}
+
+/** Stores a legal plan and brings the calls in line; false when the studio has changed since its facts were read. */
+function keep(db: Database, facts: PlanFacts, given: StudioProblem, plan: Plan, now: number): boolean {
+  const studioId = facts.owner.id
+  const lastStarts = lastStartsOf(plan, given, facts, minutesFrom(given.zeroAt, now, Math.floor))
+  const stored = change(db, studioId, 'plan', tx => isCurrent(tx, facts) && storePlan(tx, facts, given, plan, lastStarts, now) > 0)
+  if (!stored) return false
   tellingListener(db, studioId, now)
-  return { ok: true, planned: solved.plan.entries.length }
+  // All in one go: whatever was committed since the facts were read is the plan itself and its calls.
+  facts.owner.revision = revisionOf(db, studioId)
+  return true
 }

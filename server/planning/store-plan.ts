@@ -5,7 +5,7 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { familyOf } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
 import type { LastStarts } from '~~/server/planning/last-starts'
-import type { Transaction } from '~~/server/utils/database'
+import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import type { Plan } from '#shared/planning/types'
 
@@ -51,11 +51,13 @@ function silentStarts(facts: PlanFacts, now: number): Map<number, number> {
   }))
 }
 
-/** Whether a plan is still for the studio that it was made from. */
-export function isCurrent(tx: Transaction, facts: PlanFacts): boolean {
-  const row = tx.get<{ revision: number }>(sql`select revision from studio where id = ${facts.owner.id}`)
-  return row?.revision === facts.owner.revision
+/** How often the studio has been changed. */
+export function revisionOf(tx: Transaction | Database, studioId: number): number {
+  return tx.get<{ revision: number }>(sql`select revision from studio where id = ${studioId}`)?.revision ?? 0
 }
+
+/** Whether a plan is still for the studio that it was made from. */
+export const isCurrent = (tx: Transaction, facts: PlanFacts): boolean => revisionOf(tx, facts.owner.id) === facts.owner.revision
 
 /** Puts the plan of a studio away that has nothing left to plan. */
 export function clearPlan(tx: Transaction, studioId: number) {

@@ -1,10 +1,11 @@
 import { Worker } from 'node:worker_threads'
 import { answer } from '~~/server/planner/answer'
 import type { PlanAnswer, PlanRequest } from '~~/server/planner/answer'
+import type { Violation } from '#shared/planning/check'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 
 /** `superseded`: a newer problem with the same key was given; drop this one. The others are worth a line in the log; the last plan stays. */
-export type PlanResult = { ok: true, plan: Plan } | { ok: false, reason: 'superseded' | 'timeout' | 'crashed' | 'refused' | 'closed', message: string }
+export type PlanResult = { ok: true, plan: Plan, broken: readonly Violation[] } | { ok: false, reason: 'superseded' | 'timeout' | 'crashed' | 'refused' | 'closed', message: string }
 
 export interface RunnerOptions {
   /** The built worker; null plans in this thread. */
@@ -15,7 +16,18 @@ export interface RunnerOptions {
   patience?: number
 }
 
-interface Job { key: string, request: PlanRequest, settle: (result: PlanResult) => void }
+export interface RunOptions {
+  seed?: number
+  /** Plans built or changed at most; without it as many as there is time for. */
+  schedules?: number
+  /** Told the first plan at once; the answer is the best. */
+  onFirst?: (plan: Plan, broken: readonly Violation[]) => void
+}
+
+interface Job { key: string, request: PlanRequest, onFirst: RunOptions['onFirst'], settle: (result: PlanResult) => void }
+
+/** In this thread nobody is held up for longer than these take. */
+const schedulesHere = 24
 
 const superseded: PlanResult = { ok: false, reason: 'superseded', message: 'A newer problem was given.' }
 const shut: PlanResult = { ok: false, reason: 'closed', message: 'The planner is closed.' }
@@ -40,13 +52,14 @@ export class PlanRunner {
   }
 
   /** Of problems with one key the last one wins: an older one, waiting or being solved, ends as superseded. Never rejects. */
-  run(key: string, problem: PlanProblem, { seed = 1, schedules = 24 }: { seed?: number, schedules?: number } = {}): Promise<PlanResult> {
+  run(key: string, problem: PlanProblem, { seed = 1, schedules, onFirst }: RunOptions = {}): Promise<PlanResult> {
     if (this.closed) return Promise.resolve(shut)
     this.waiting.get(key)?.settle(superseded)
     this.waiting.delete(key)
     if (this.current?.key === key) Atomics.store(new Int32Array(this.current.request.cancel), 0, 1)
     return new Promise((settle) => {
-      this.waiting.set(key, { key, settle, request: { id: ++this.count, problem, seed, schedules, millis: this.millis, cancel: new SharedArrayBuffer(4) } })
+      const most = schedules ?? (this.file ? Infinity : schedulesHere)
+      this.waiting.set(key, { key, settle, onFirst, request: { id: ++this.count, problem, seed, schedules: most, millis: this.millis, cancel: new SharedArrayBuffer(4) } })
       this.next()
     })
   }
@@ -69,7 +82,7 @@ export class PlanRunner {
     this.waiting.delete(job.key)
     this.current = job
     if (this.file === null) {
-      setImmediate(() => this.heard(answer(job.request)))
+      setImmediate(() => this.heard(answer(job.request, first => this.heard(first))))
       return
     }
     const worker = this.worker ??= this.started(this.file)
@@ -88,9 +101,11 @@ export class PlanRunner {
   }
 
   private heard(reply: PlanAnswer): void {
-    if (reply.id !== this.current?.request.id) return
-    const stopped = Atomics.load(new Int32Array(this.current.request.cancel), 0) !== 0
-    this.finish(stopped ? superseded : reply.ok ? { ok: true, plan: reply.plan } : { ok: false, reason: 'refused', message: reply.message })
+    const job = this.current
+    if (!job || reply.id !== job.request.id) return
+    if (reply.ok && !reply.last) return job.onFirst?.(reply.plan, reply.broken)
+    const stopped = Atomics.load(new Int32Array(job.request.cancel), 0) !== 0
+    this.finish(stopped ? superseded : reply.ok ? { ok: true, plan: reply.plan, broken: reply.broken } : { ok: false, reason: 'refused', message: reply.message })
   }
 
   private lose(worker: Worker, reason: 'crashed' | 'timeout', message: string): void {

@@ -1,0 +1,63 @@
+import { Board } from './board'
+import { nameFixed } from './clash'
+import { fillIn } from './construct'
+import { Seat } from './seat'
+import type { Layout } from './construct'
+import type { Model } from './model'
+import type { Unit } from './units'
+
+interface Next { seat: Seat, node: number, at: number }
+
+/**
+ * The last plan on the facts of now: every activity in the order of its old starts and not before it, so that sessions form as they did.
+ * A piece that cannot keep to it (a window has moved, a place is taken) comes off and is placed anew after the others, as is what is new.
+ * @param units each piece alone
+ * @param floors old starts by activity
+ */
+export function replay(model: Model, units: readonly Unit[], floors: Int32Array, shouldStop: () => boolean): Layout | null {
+  const board = new Board(model)
+  const layout: Layout = { board, seats: [], conflicts: nameFixed(board) }
+  const seats = units.map(unit => new Seat(board, unit))
+  const { previous } = model.problem
+  const isOld = (seat: Seat) => seat.unit.nodes.some(node => model.problem.activities[node.members[0]!]!.id in previous)
+  const old = seats.filter(isOld)
+  for (const seat of old) seat.open(floors)
+  const steps = old.flatMap(seat => stepsOf(seat, floors)).sort((a, b) => a.at - b.at)
+  const failed = new Set<Seat>()
+  for (const { seat, node } of steps) {
+    if (failed.has(seat) || seat.placeNode(node).kind === 'placed') continue
+    failed.add(seat)
+  }
+  const off = withLater(failed, old)
+  for (const seat of off) seat.remove()
+  board.settle()
+  layout.seats.push(...old.filter(seat => !off.has(seat)))
+  const rest = seats.filter(seat => !isOld(seat) || off.has(seat))
+  for (const seat of rest) for (const node of seat.unit.nodes) for (const activity of node.members) board.placed[activity] = 0
+  return fillIn(layout, rest, floors, shouldStop) ? layout : null
+}
+
+/** The nodes of a unit with their old starts, none before what it waits for. */
+function stepsOf(seat: Seat, floors: Int32Array): Next[] {
+  const at = seat.unit.nodes.map(node => floors[node.members[0]!]!)
+  return seat.unit.nodes.map((_, node) => {
+    for (const edge of seat.unit.into[node]!) if (edge.from >= 0 && edge.from < node) at[node] = Math.max(at[node]!, at[edge.from]!)
+    return { seat, node, at: at[node]! }
+  })
+}
+
+/** Those given, and all that came on to one of their sessions after them: they cannot stay without. */
+export function withLater(given: ReadonlySet<Seat>, all: readonly Seat[]): Set<Seat> {
+  const off = new Set(given)
+  if (all.every(seat => seat.unit.nodes.every((_, node) => seat.session(node) === null))) return off
+  const seatOf = new Map(all.map(seat => [seat.unit, seat]))
+  for (const seat of off) {
+    for (let node = 0; node < seat.unit.nodes.length; node++) {
+      const joins = seat.session(node)?.now?.joins
+      if (!joins) continue
+      const from = joins.findIndex(join => join.unit === seat.unit)
+      for (let i = from + 1; from >= 0 && i < joins.length; i++) off.add(seatOf.get(joins[i]!.unit)!)
+    }
+  }
+  return off
+}
