@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
-import { flag, id, instant, oneOf, studioKey, within } from './columns'
+import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { member, studio } from './studio'
 import { placeKinds, readingSources } from '#shared/terms'
 import type { AirMove, PlaceKind, ReadingSource } from '#shared/terms'
@@ -50,6 +50,25 @@ export const carrier = sqliteTable('carrier', {
   name: text('name').notNull(),
 }, t => [studioKey(t), unique().on(t.studioId, t.code)])
 
+/** A logger's file that was brought in: its readings come together and are taken back together. `lines` counts the readings it added. */
+export const readingImport = sqliteTable('reading_import', {
+  id: id(),
+  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  roomId: integer('room_id').notNull(),
+  fileName: text('file_name').notNull(),
+  fromAt: instant('from_at').notNull(),
+  toAt: instant('to_at').notNull(),
+  lines: integer('lines').notNull(),
+  /** Readings of the file that the room had already. */
+  known: integer('known').notNull().default(0),
+  toldAt: instant('told_at').notNull(),
+  memberId: integer('member_id'),
+  clientKey: text('client_key').notNull(),
+}, t => [
+  studioKey(t), belongsTo(t, t.roomId, room), within(t, t.memberId, member), unique().on(t.studioId, t.clientKey),
+  check('reading_import_lines', sql`${t.lines} > 0`), check('reading_import_order', sql`${t.fromAt} <= ${t.toAt}`),
+])
+
 /** A note of the air in a room. `doubt` is the extra log standard deviation of its source. */
 export const reading = sqliteTable('reading', {
   id: id(),
@@ -63,8 +82,11 @@ export const reading = sqliteTable('reading', {
   doubt: real('doubt').notNull().default(0),
   memberId: integer('member_id'),
   clientKey: text('client_key'),
+  /** The file it came with. */
+  importId: integer('import_id'),
 }, t => [
-  studioKey(t), within(t, t.roomId, room), within(t, t.memberId, member),
+  studioKey(t), within(t, t.roomId, room), within(t, t.memberId, member), belongsTo(t, t.importId, readingImport),
+  index('reading_of_import').on(t.importId).where(sql`${t.importId} is not null`),
   uniqueIndex('reading_once').on(t.roomId, t.at, t.source),
   uniqueIndex('reading_client_key').on(t.studioId, t.clientKey),
   oneOf('reading_source', t.source, readingSources),
