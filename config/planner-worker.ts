@@ -1,6 +1,6 @@
 import { join } from 'node:path'
 import { defineNuxtModule } from '@nuxt/kit'
-import { build } from 'vite'
+import { ownBundle } from './own-bundle'
 
 /**
  * Bundles `server/planner/worker.ts` by itself and lays it beside the built server, where `server/utils/planRunner.ts`
@@ -14,20 +14,13 @@ export default defineNuxtModule({
     if (nuxt.options._prepare || nuxt.options.dev) return
     nuxt.hook('nitro:init', (nitro) => {
       nitro.hooks.hook('compiled', async () => {
-        await build({
-          configFile: false,
-          root: nuxt.options.rootDir,
-          logLevel: 'warn',
-          publicDir: false,
-          resolve: { alias: { '#shared': join(nuxt.options.rootDir, 'shared') } },
-          build: {
-            outDir: nitro.options.output.serverDir,
-            emptyOutDir: false,
-            minify: false,
-            target: 'node20',
-            rollupOptions: { external: [/^node:/] },
-            lib: { entry: join(nuxt.options.rootDir, 'server/planner/worker.ts'), formats: ['es'], fileName: () => 'planner-worker.mjs' },
-          },
+        await ownBundle(nuxt.options.rootDir, {
+          outDir: nitro.options.output.serverDir,
+          emptyOutDir: false,
+          minify: false,
+          target: 'node20',
+          rollupOptions: { external: [/^node:/] },
+          lib: { entry: join(nuxt.options.rootDir, 'server/planner/worker.ts'), formats: ['es'], fileName: () => 'planner-worker.mjs' },
         })
       })
     })

@@ -1,6 +1,6 @@
 import { join } from 'node:path'
 import { defineNuxtModule } from '@nuxt/kit'
-import { build } from 'vite'
+import { ownBundle } from './own-bundle'
 
 /**
  * Builds `service-worker/sw.ts` into one classic script served as /sw.js. A precaching module was refused:
@@ -16,17 +16,10 @@ export default defineNuxtModule({
     })
     // Not earlier: Nuxt empties its build folder just before.
     nuxt.hook('build:before', async () => {
-      await build({
-        configFile: false,
-        root: nuxt.options.rootDir,
-        logLevel: 'warn',
-        publicDir: false,
-        resolve: { alias: { '#shared': join(nuxt.options.rootDir, 'shared') } },
-        build: {
-          outDir: out,
-          emptyOutDir: true,
-          lib: { entry: join(nuxt.options.rootDir, 'service-worker/sw.ts'), formats: ['iife'], name: 'stillwetWorker', fileName: () => 'sw.js' },
-        },
+      await ownBundle(nuxt.options.rootDir, {
+        outDir: out,
+        emptyOutDir: true,
+        lib: { entry: join(nuxt.options.rootDir, 'service-worker/sw.ts'), formats: ['iife'], name: 'stillwetWorker', fileName: () => 'sw.js' },
       })
     })
   },

@@ -1,13 +1,13 @@
 import { sql } from 'drizzle-orm'
 import { check, integer, primaryKey, real, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
-import { studio } from './studio'
+import { studioColumn } from './studio'
 import { drivers, milestoneNames, sourceKeys } from '#shared/terms'
 import type { Driver, MilestoneName, SourceKey } from '#shared/terms'
 
 export const material = sqliteTable('material', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   libraryKey: text('library_key'),
   name: text('name').notNull(),
   archivedAt: instant('archived_at'),
@@ -16,7 +16,7 @@ export const material = sqliteTable('material', {
 /** One edition of a material's figures. Once a coat has used it (`frozen`) it is never changed. */
 export const materialVersion = sqliteTable('material_version', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   materialId: integer('material_id').notNull(),
   no: integer('no').notNull(),
   frozen: flag('frozen').notNull().default(false),
@@ -32,7 +32,7 @@ export const materialVersion = sqliteTable('material_version', {
 
 /** A figure of the sheet that is not a milestone: temperatures, humidity limits, film, coverage, pot life. */
 export const materialFigure = sqliteTable('material_figure', {
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   versionId: integer('version_id').notNull(),
   name: text('name').notNull(),
   low: real('low'),
@@ -48,7 +48,7 @@ export const materialFigure = sqliteTable('material_figure', {
 
 /** A rung of the ladder: minutes from application at the reference climate in a normal coat. */
 export const milestone = sqliteTable('milestone', {
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   versionId: integer('version_id').notNull(),
   ordinal: integer('ordinal').notNull(),
   name: text('name').$type<MilestoneName>().notNull(),
@@ -67,7 +67,7 @@ export const milestone = sqliteTable('milestone', {
 
 /** An interval in which the next coat may go on, in reference minutes; either end may be open. */
 export const recoatWindow = sqliteTable('recoat_window', {
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   versionId: integer('version_id').notNull(),
   ordinal: integer('ordinal').notNull(),
   fromMin: real('from_min'),
@@ -83,7 +83,7 @@ export const recoatWindow = sqliteTable('recoat_window', {
 
 export const tin = sqliteTable('tin', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   materialId: integer('material_id').notNull(),
   openedAt: instant('opened_at').notNull(),
 }, t => [studioKey(t), within(t, t.materialId, material)])
@@ -91,12 +91,12 @@ export const tin = sqliteTable('tin', {
 /** A material made of parts; its own ladder lives in its versions like any other. */
 export const mix = sqliteTable('mix', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   materialId: integer('material_id').notNull().unique(),
 }, t => [studioKey(t), within(t, t.materialId, material)])
 
 export const mixPart = sqliteTable('mix_part', {
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   mixId: integer('mix_id').notNull(),
   materialId: integer('material_id').notNull(),
   parts: real('parts').notNull(),

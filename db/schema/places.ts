@@ -1,14 +1,14 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
 import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
-import { member, studio } from './studio'
+import { member, studioColumn } from './studio'
 import { placeKinds, readingSources } from '#shared/terms'
 import type { AirMove, PlaceKind, ReadingSource } from '#shared/terms'
 
 /** A room with air of its own. Unknown volume or exhaust is null and never lowers a caution. */
 export const room = sqliteTable('room', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   name: text('name').notNull(),
   sort: integer('sort').notNull().default(0),
   heated: flag('heated').notNull(),
@@ -31,7 +31,7 @@ export const room = sqliteTable('room', {
 /** Somewhere a part can stand, hang or be held. `capacity` counts size units. */
 export const place = sqliteTable('place', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   roomId: integer('room_id').notNull(),
   name: text('name').notNull(),
   kind: text('kind').$type<PlaceKind>().notNull(),
@@ -45,7 +45,7 @@ export const place = sqliteTable('place', {
 /** A board or tray that pieces stand on; it carries the tag, since a wet cover cannot. */
 export const carrier = sqliteTable('carrier', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   code: text('code').notNull(),
   name: text('name').notNull(),
 }, t => [studioKey(t), unique().on(t.studioId, t.code)])
@@ -53,7 +53,7 @@ export const carrier = sqliteTable('carrier', {
 /** A logger's file that was brought in: its readings come together and are taken back together. `lines` counts the readings it added. */
 export const readingImport = sqliteTable('reading_import', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   roomId: integer('room_id').notNull(),
   fileName: text('file_name').notNull(),
   fromAt: instant('from_at').notNull(),
@@ -72,7 +72,7 @@ export const readingImport = sqliteTable('reading_import', {
 /** A note of the air in a room. `doubt` is the extra log standard deviation of its source. */
 export const reading = sqliteTable('reading', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   roomId: integer('room_id').notNull(),
   at: instant('at').notNull(),
   toldAt: instant('told_at').notNull(),

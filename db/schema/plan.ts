@@ -4,10 +4,11 @@ import { milestoneNames, planStatuses } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
 import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { place, room } from './places'
-import { member, studio } from './studio'
-import { act, coat, part, turn } from './work'
-
-const studioColumn = () => integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' })
+import { member, studioColumn } from './studio'
+import { act } from './acts'
+import { coat } from './films'
+import { part } from './pieces'
+import { turn } from './steps'
 
 /** When a film will have come so far: the middle, the 90 % and the 98 % time. Null with a reason, never a sentinel. */
 export const prediction = sqliteTable('prediction', {

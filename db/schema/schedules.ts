@@ -2,11 +2,9 @@ import { sql } from 'drizzle-orm'
 import { check, integer, primaryKey, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
 import { material } from './materials'
-import { studio } from './studio'
+import { studioColumn } from './studio'
 import { coatSizes, dustClasses, grounds, holds, milestoneNames, placeKinds, risks, stepKinds } from '#shared/terms'
 import type { CoatSize, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, StepKind } from '#shared/terms'
-
-const studioColumn = () => integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' })
 
 export const finishingSchedule = sqliteTable('finishing_schedule', {
   id: id(),

@@ -21,6 +21,9 @@ export const studio = sqliteTable('studio', {
   check('studio_usual_temp', sql`${t.usualTempC} between -40 and 60`),
 ])
 
+/** Says whose a row is; it goes with its studio. */
+export const studioColumn = () => integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' })
+
 /** Somebody who can sign in. One person may belong to several studios. */
 export const person = sqliteTable('person', {
   id: id(),
@@ -33,7 +36,7 @@ export const person = sqliteTable('person', {
 /** A person's place in a studio. `pinHash` is for acting as oneself at a bench tablet. */
 export const member = sqliteTable('member', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   personId: integer('person_id').notNull().references(() => person.id, { onDelete: 'cascade' }),
   role: text('role').$type<Role>().notNull(),
   pinHash: text('pin_hash'),
@@ -42,7 +45,7 @@ export const member = sqliteTable('member', {
 
 /** The kinds of step the owner lets this helper do. */
 export const memberStepKind = sqliteTable('member_step_kind', {
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   memberId: integer('member_id').notNull(),
   kind: text('kind').$type<StepKind>().notNull(),
 }, t => [primaryKey({ columns: [t.memberId, t.kind] }), within(t, t.memberId, member), oneOf('member_step_kind_word', t.kind, stepKinds)])
@@ -60,7 +63,7 @@ export const session = sqliteTable('session', {
 
 export const invitation = sqliteTable('invitation', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   tokenHash: text('token_hash').notNull().unique(),
   role: text('role').$type<Role>().notNull(),
   email: text('email'),
@@ -79,7 +82,7 @@ export const passwordReset = sqliteTable('password_reset', {
 /** A secret address that shows the handling sheet and nothing else. */
 export const wallLink = sqliteTable('wall_link', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   name: text('name').notNull(),
   tokenHash: text('token_hash').notNull().unique(),
   madeAt: instant('made_at').notNull(),
@@ -88,7 +91,7 @@ export const wallLink = sqliteTable('wall_link', {
 
 export const benchTablet = sqliteTable('bench_tablet', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   name: text('name').notNull(),
   tokenHash: text('token_hash').notNull().unique(),
   madeAt: instant('made_at').notNull(),
@@ -98,7 +101,7 @@ export const benchTablet = sqliteTable('bench_tablet', {
 /** Working hours in local wall time, of the studio (member null) or of one person. Minutes since midnight. */
 export const openHours = sqliteTable('open_hours', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   memberId: integer('member_id'),
   weekday: integer('weekday').notNull(),
   fromMin: integer('from_min').notNull(),
@@ -113,7 +116,7 @@ export const openHours = sqliteTable('open_hours', {
 /** Days without work, of the studio (a closure) or of one person (an absence). Local dates, both ends included. */
 export const closure = sqliteTable('closure', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   memberId: integer('member_id'),
   name: text('name').notNull().default(''),
   fromDate: text('from_date').notNull(),
@@ -133,7 +136,7 @@ export const serverKey = sqliteTable('server_key', {
 /** Who changed a row that is not a fold of acts, and how. */
 export const audit = sqliteTable('audit', {
   id: id(),
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   tableName: text('table_name').notNull(),
   rowId: integer('row_id').notNull(),
   memberId: integer('member_id'),
@@ -144,7 +147,7 @@ export const audit = sqliteTable('audit', {
 
 /** Which optional calls a member has turned on or off; no row means the default of the kind. */
 export const callChoice = sqliteTable('call_choice', {
-  studioId: integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' }),
+  studioId: studioColumn(),
   memberId: integer('member_id').notNull(),
   kind: text('kind').notNull(),
   wanted: flag('wanted').notNull(),

@@ -2,10 +2,8 @@ import { index, integer, primaryKey, sqliteTable, text, unique } from 'drizzle-o
 import { channels, deliveryStatuses, reminderStatuses } from '#shared/terms'
 import type { Channel } from '#shared/terms'
 import { id, instant, oneOf, studioKey, within } from './columns'
-import { member, studio } from './studio'
-import { act } from './work'
-
-const studioColumn = () => integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' })
+import { member, studioColumn } from './studio'
+import { act } from './acts'
 
 /** Why anybody is called at all. `groupKey` keeps twelve covers of one row to one call. */
 export const cause = sqliteTable('cause', {

@@ -5,10 +5,8 @@ import type { ExhaustAnswer, StatementKind } from '#shared/terms'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
 import { material } from './materials'
 import { room } from './places'
-import { member, studio } from './studio'
-import { act } from './work'
-
-const studioColumn = () => integer('studio_id').notNull().references(() => studio.id, { onDelete: 'cascade' })
+import { member, studioColumn } from './studio'
+import { act } from './acts'
 
 /** Somebody begins solvent work in a room, with the three answers given before. Everybody is told. `actId` is the act that began it. */
 export const vapourStart = sqliteTable('vapour_start', {
