@@ -9,7 +9,7 @@ import { probe } from './bench/model/probes'
 import { rungLines, summaryLines } from './bench/model/table'
 import { worlds } from './bench/model/worlds'
 
-const usage = `npm run bench:model [-- --benches N] [--learner NAME] [--seed N]
+const usage = `npm run bench:model [-- --benches N] [--learner NAME] [--seed N] [--worlds a,b]
 
 Measures how well a bench's own touch tests make its times right, in worlds whose truth is known. Prints every bar.
 Learners: ${Object.keys(learners).join(', ')}. Default: 2,000 benches a cell, the last learner.`
@@ -43,13 +43,15 @@ function main(args: readonly string[]): number {
   }
   const began = performance.now()
   const tools = dryingTools()
-  const cells = worlds.flatMap((world, w) => names.map((name, m) => {
+  const asked = optionOf(args, '--worlds', worlds.map(w => w.name).join(',')).split(',')
+  const chosen = worlds.filter(w => asked.includes(w.name))
+  const cells = chosen.flatMap((world, w) => names.map((name, m) => {
     const material = materialOf(name)
     return { world, material, name, result: runCell(world, material, learner, benches, seed + 1_000_003 * (w * names.length + m), tools) }
   }))
   console.log(`learner: ${learner.name} (${learner.says}); ${benches} benches a cell; seed ${seed}`)
-  for (const { name, says } of worlds) console.log(`world ${name}: ${says}`)
-  for (const line of summaryLines(cells, worlds)) console.log(line)
+  for (const { name, says } of chosen) console.log(`world ${name}: ${says}`)
+  for (const line of summaryLines(cells, chosen)) console.log(line)
   for (const name of names) {
     const { inBand, late, disorder, nulls, leastSpan } = probe(materialOf(name), learner, tools)
     console.log(`  ${name.padEnd(24)} one test in band moves another rung ${(100 * inBand).toFixed(1)}% (bar 10)${inBand <= 0.1 ? '' : '!'}; 20 late ones move the speed ${(100 * late).toFixed(1)}% (bar 3)${late <= 0.03 ? '' : '!'}; far out: ${disorder} out of order, ${nulls} nulls without cause, give-till at least ${(100 * leastSpan).toFixed(0)}% further on`)

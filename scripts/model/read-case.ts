@@ -4,8 +4,11 @@ import { findLibraryMaterial } from '#shared/library/index'
 import { dryingMaterial } from '#shared/library/types'
 import { BadField, instantAt, listAt, numberAt, objectAt, oneOfAt, optional, textAt, yesNoAt } from './fields'
 
-/** One case of the contract, read and checked. `theta` null: the bench is as the sheet says. */
-export interface ModelCase { material: DryingMaterial, coat: CoatCase, room: RoomAir, theta: number | null, now: number }
+/** An earlier coat of the same material in this studio, with the air it stood in. */
+export interface EarlierCoat { coat: CoatCase, room: RoomAir, witness: boolean[] }
+
+/** One case of the contract, read and checked. `theta` null: the bench is as the sheet and its earlier coats say. */
+export interface ModelCase { material: DryingMaterial, coat: CoatCase, room: RoomAir, history: EarlierCoat[], theta: number | null, now: number }
 
 const longestMinutes = 5_000_000
 
@@ -83,7 +86,7 @@ function readTest(field: string, value: unknown, names: readonly string[], appli
   return test
 }
 
-function readCoat(at: (name: string) => string, value: unknown, names: readonly string[]): CoatCase & { readings: Reading[] } {
+function readCoat(at: (name: string) => string, value: unknown, names: readonly string[]): CoatCase & { readings: Reading[], witness: boolean[] } {
   const fields = objectAt(at(''), value)
   const appliedAt = instantAt(at('appliedAt'), fields.appliedAt)
   const list = (name: string) => optional(fields[name], [], v => listAt(at(name), v))
@@ -93,6 +96,7 @@ function readCoat(at: (name: string) => string, value: unknown, names: readonly 
     ground: optional(fields.ground, 'primed', v => oneOfAt(at('ground'), v, grounds)),
     airSpeed: optional(fields.airSpeed, 0.1, v => numberAt(at('airSpeed'), v, 0, 10)),
     tests: list('tests').map((t, i) => readTest(at(`tests[${i}]`), t, names, appliedAt)),
+    witness: list('tests').map((t, i) => optional(objectAt(at(`tests[${i}]`), t).witness, false, v => yesNoAt(at(`tests[${i}].witness`), v))),
     readings: list('readings').map((r, i) => readReading(at(`readings[${i}]`), r)),
   }
 }
@@ -114,26 +118,29 @@ function readUsual(field: string, value: unknown): { tempC: number, rh: number }
 
 /**
  * Reads one case of the contract. `place` names the case in a list ("[2]") or is empty. Throws BadField with one line for the first field
- * that cannot be used. Earlier coats (`history`) are checked like the coat itself.
+ * that cannot be used. Earlier coats (`history`) are read like the coat itself; they share its zone, heating and usual climate.
  */
 export function readCase(value: unknown, place: string): ModelCase {
   const at = (name: string) => [place, name].filter(Boolean).join('.') || 'case'
   const fields = objectAt(at(''), value)
   const material = readMaterial(at('material'), fields.material)
   const names = material.milestones.map(m => m.name)
-  const { readings, ...coat } = readCoat(at, fields, names)
-  const history = optional(fields.history, [], v => listAt(at('history'), v))
-  for (const [i, earlier] of history.entries()) readCoat(name => [at(`history[${i}]`), name].filter(Boolean).join('.'), earlier, names)
+  const { readings, witness: _witness, ...coat } = readCoat(at, fields, names)
+  const air = {
+    heated: optional(fields.heated, false, v => yesNoAt(at('heated'), v)),
+    nightDropC: optional(fields.nightDropC, 4, v => numberAt(at('nightDropC'), v, 0, 40)),
+    zone: optional(fields.zone, 'UTC', v => readZone(at('zone'), v)),
+    usual: optional(fields.usual, { tempC: 20, rh: 0.5 }, v => readUsual(at('usual'), v)),
+  }
+  const history = optional(fields.history, [], v => listAt(at('history'), v)).map((earlier, i): EarlierCoat => {
+    const { readings: read, witness, ...before } = readCoat(name => [at(`history[${i}]`), name].filter(Boolean).join('.'), earlier, names)
+    return { coat: before, room: { ...air, readings: read }, witness }
+  })
   return {
     material,
     coat,
-    room: {
-      readings,
-      heated: optional(fields.heated, false, v => yesNoAt(at('heated'), v)),
-      nightDropC: optional(fields.nightDropC, 4, v => numberAt(at('nightDropC'), v, 0, 40)),
-      zone: optional(fields.zone, 'UTC', v => readZone(at('zone'), v)),
-      usual: optional(fields.usual, { tempC: 20, rh: 0.5 }, v => readUsual(at('usual'), v)),
-    },
+    room: { ...air, readings },
+    history,
     theta: optional(fields.theta, null, v => numberAt(at('theta'), v, -5, 5)),
     now: optional(fields.now, coat.appliedAt, v => instantAt(at('now'), v)),
   }

@@ -1,15 +1,27 @@
 import type { DryingTools } from '#shared/drying/tools'
 import { roomClock } from '#shared/drying/clock'
-import type { BenchSpeed } from '#shared/drying/material'
-import { prepareMaterial, sheetSpeed } from '#shared/drying/material'
+import type { BenchSpeed, PreparedMaterial } from '#shared/drying/material'
+import { prepareMaterial } from '#shared/drying/material'
+import { benchTests, weightOf } from '#shared/drying/bench-tests'
+import { learnBench } from '#shared/drying/learn'
 import { predictCoat } from '#shared/drying/predict'
 import type { ModelCase } from './read-case'
 
 const iso = (at: number | null) => at === null ? null : new Date(at).toISOString()
 
+/** What the studio's earlier coats teach about the material, as of `now`: tests made later are left out. */
+function benchOf(sheet: PreparedMaterial, { history, now }: ModelCase, tools: DryingTools): BenchSpeed {
+  const tests = history.flatMap(({ coat, room, witness }) => {
+    const asked = (coat.tests ?? []).map((test, i) => ({ ...test, weight: weightOf(test.at, now, []), witness: witness[i]! })).filter(test => test.at <= now)
+    return benchTests(sheet, coat, [{ clock: roomClock(room, coat.appliedAt, tools), fromAt: coat.appliedAt, toAt: null }], asked)
+  })
+  return learnBench(sheet.rungs.map(rung => rung.quantiles), tests)
+}
+
 /** Predicts one case and writes it as the contract asks: instants in ISO 8601 UTC. */
-export function runCase({ material, coat, room, theta, now }: ModelCase, tools: DryingTools) {
-  const bench: BenchSpeed = theta === null ? sheetSpeed : { kind: 'fixed', theta }
+export function runCase(given: ModelCase, tools: DryingTools) {
+  const { material, coat, room, theta, now } = given
+  const bench: BenchSpeed = theta === null ? benchOf(prepareMaterial(material, tools), given, tools) : { kind: 'fixed', theta }
   const prepared = prepareMaterial(material, tools, bench)
   const clock = roomClock(room, coat.appliedAt, tools)
   const { milestones, windows, speed, state, advice } = predictCoat(prepared, coat, [{ clock, fromAt: coat.appliedAt, toAt: null }], { now, bench })

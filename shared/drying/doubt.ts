@@ -105,7 +105,12 @@ const extraSteps = 64
 const extraStep = 0.01
 
 /** Quantiles of one rung for each chance, at extra variances 0, 0.01, ... 0.64: depends on no reading and no coat. */
-export interface QuantileTable { doubt: RungDoubt, values: readonly Float64Array[] }
+export interface QuantileTable {
+  doubt: RungDoubt
+  values: readonly Float64Array[]
+  /** Set when the bench's own tests speak: then `values` are theirs, and `scale` is the sheet they are read on. */
+  learned?: RungLearned & { scale: SheetScale }
+}
 
 /** Builds the table: some hundreds of quantiles, each starting from its neighbour. */
 export function quantileTable(doubt: RungDoubt): QuantileTable {
@@ -117,10 +122,58 @@ export function quantileTable(doubt: RungDoubt): QuantileTable {
   return { doubt, values }
 }
 
+/** A sheet's band as a two-piece normal through its own 10, 50 and 90 % points: ln of time over typical at its middle, and one sd either side. */
+export interface SheetScale { middle: number, late: number, early: number }
+
+export function sheetScale(table: QuantileTable): SheetScale {
+  const [ten, fifty, ninety] = table.values.slice(0, 3).map(row => row[0]!) as [number, number, number]
+  return { middle: fifty, late: (ninety - fifty) / bandZ, early: (fifty - ten) / bandZ }
+}
+
+/** What a bench's tests make of a rung: a mixture of normals on the sheet's own scale (0 its middle, 1 its sd). */
+export interface RungLearned { parts: readonly { weight: number, mean: number, variance: number }[] }
+
+/**
+ * The score of a chance: the divisions' own quantiles averaged by their weights, every part widened by `extra`. Not the quantile of the
+ * mixture: a division that is all but ruled out would still own its far tail, and benches that are even would be kept waiting for it.
+ */
+function pooledScore(parts: RungLearned['parts'], p: number, extra: number): number {
+  const z = normalQuantile(p)
+  return parts.reduce((sum, { weight, mean, variance }) => sum + weight * (mean + z * Math.sqrt(variance + extra)), 0)
+}
+
+/** Extra sd at which a learned table is worked out; between them it is straight. */
+const learnedSds = [0, 0.1, 0.2, 0.4, 0.8] as const
+
+/** The table of a rung as its bench has it: the sheet's scale, read at the bench's own scores. */
+export function learnedTable(sheet: QuantileTable, { parts }: RungLearned): QuantileTable {
+  const scale = sheetScale(sheet)
+  const values = chances.map((p) => {
+    const plain = pooledScore(parts, p, 0)
+    const side = plain > 0 ? scale.late : scale.early
+    const at = learnedSds.map(sd => scale.middle + side * pooledScore(parts, p, (sd / side) ** 2))
+    let under = 0
+    return Float64Array.from({ length: extraSteps + 1 }, (_, i) => {
+      const sd = Math.sqrt(i * extraStep)
+      while (under < learnedSds.length - 2 && learnedSds[under + 1]! < sd) under++
+      const share = (sd - learnedSds[under]!) / (learnedSds[under + 1]! - learnedSds[under]!)
+      return at[under]! + (at[under + 1]! - at[under]!) * share
+    })
+  })
+  return { doubt: sheet.doubt, values, learned: { parts, scale } }
+}
+
+function beyondTable({ doubt, learned }: QuantileTable, chance: Chance, extra: number): number {
+  if (!learned) return quantile(chances[chance], doubt, extra)
+  const { parts, scale } = learned
+  const side = pooledScore(parts, chances[chance], 0) > 0 ? scale.late : scale.early
+  return scale.middle + side * pooledScore(parts, chances[chance], extra / (side * side))
+}
+
 /** The x of a chance at an extra variance, by linear interpolation; worked out afresh beyond the table. */
 export function tabledQuantile(table: QuantileTable, chance: Chance, extra: number): number {
   const place = extra / extraStep
-  if (place >= extraSteps) return quantile(chances[chance], table.doubt, extra)
+  if (place >= extraSteps) return beyondTable(table, chance, extra)
   const i = Math.floor(place)
   const row = table.values[chance]!
   return row[i]! + (row[i + 1]! - row[i]!) * (place - i)

@@ -3,7 +3,6 @@ import type { AirSpan, Climb } from '#shared/drying/ladder'
 import { climb, minutesAt } from '#shared/drying/ladder'
 import type { BenchSpeed, PreparedEnd, PreparedMaterial } from '#shared/drying/material'
 import { sheetSpeed } from '#shared/drying/material'
-import { bandZ } from '#shared/drying/doubt'
 import type { Target } from '#shared/drying/solve'
 import { extraVariance, groundVariance, solve, targetAt } from '#shared/drying/solve'
 import type { Said } from '#shared/drying/tests-said'
@@ -31,7 +30,8 @@ function rawTimes(way: Climb, target: Target, theta: number): Raw {
 /** A window's end has the doubt of the rung it falls in, but not what a strange ground adds, nor what tests of rungs say. */
 function windowEnd(way: Climb, end: PreparedEnd, chance: 0 | 2, theta: number, extra: number, lastReadingAt: number | null): number | null {
   if (!(end.minutes > 0)) return way.appliedAt
-  const target = targetAt(way, end.minutes, end.rung, way.material.windowQuantiles, extra, lastReadingAt, null)
+  const minutes = end.minutes * Math.exp(way.material.rungs[end.rung]!.shift)
+  const target = targetAt(way, minutes, end.rung, way.material.windowQuantiles, extra, lastReadingAt, null)
   return withinHorizon(way, solve(way, target, chance, theta))
 }
 
@@ -58,15 +58,13 @@ export function predictCoat(material: PreparedMaterial, coat: CoatCase, spans: r
     rawTimes(way, targetAt(way, typical, i, quantiles, i === 0 ? firstExtra : extra, lastReadingAt, said[i]!.notYetAt), theta))
   const chilledAt = firstChill(way, spans, raws[material.handle]!.likely, said)
   const milestones = upTheLadder(way, spans, raws, said, chilledAt)
-  const pace = Math.exp(-theta)
-  const spread = Math.exp(bandZ * Math.sqrt(material.tau2))
   const prediction: CoatPrediction = {
     milestones,
     windows: material.windows.map(({ from, to }): WindowPrediction => ({
       opensAt: from ? windowEnd(way, from, 2, theta, extra, lastReadingAt) : way.appliedAt,
       shutsAt: to ? windowEnd(way, to, 0, theta, extra, lastReadingAt) : null,
     })),
-    speed: { median: pace, p10: pace / spread, p90: pace * spread },
+    speed: material.speed,
     state: chilledAt !== null && chilledAt <= view.now ? 'doubtful' : 'sound',
     chilledAt,
     advice: [],

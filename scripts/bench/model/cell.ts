@@ -1,4 +1,5 @@
 import type { DryingMaterial } from '#shared/drying/types'
+import type { RoomClock } from '#shared/drying/clock'
 import { climb, instantOf } from '#shared/drying/ladder'
 import type { PreparedMaterial } from '#shared/drying/material'
 import { predictCoat } from '#shared/drying/predict'
@@ -26,21 +27,31 @@ export interface CellResult {
   errors: { times: number, learner: number, sheet: number, mean: number }
 }
 
-interface Foretelling { room: Room, clockAt(now: number): ReturnType<Room['knownAt']>, calendar: Calendar }
+interface Foretelling {
+  room: Room
+  calendar: Calendar
+  /** The instants at which a coat is foretold: its own, and each reading after. */
+  momentsFrom(appliedAt: number): number[]
+  clockAt(now: number, appliedAt: number): RoomClock
+}
 
 export const fullCoats = 20
 const roomsPerCell = 50
+/** How long after a coat readings are still followed. */
+const followedMs = 10 * 86_400_000
 
 function roomsOf(seed: number, tools: DryingTools): Foretelling[] {
   return Array.from({ length: roomsPerCell }, (_, i) => {
     const chance = chanceOf(seed + 7919 * i)
     const room = roomOf(chance, roomDays, tools)
-    const kept = new Map<number, ReturnType<Room['knownAt']>>()
+    const kept = new Map<string, RoomClock>()
     return {
       room, calendar: calendarOf(chance),
-      clockAt: (now) => {
-        const clock = kept.get(now) ?? room.knownAt(now)
-        kept.set(now, clock)
+      momentsFrom: appliedAt => [appliedAt, ...room.readAt.filter(at => at > appliedAt && at < appliedAt + followedMs)],
+      clockAt: (now, appliedAt) => {
+        const key = `${now} ${appliedAt}`
+        const clock = kept.get(key) ?? room.knownAt(now, appliedAt)
+        kept.set(key, clock)
         return clock
       },
     }
@@ -60,13 +71,24 @@ function count(into: Tally, likelyAt: number | null, p90At: number | null, reach
   into.ratio += (p90At - appliedAt) / (likelyAt - appliedAt)
 }
 
+/** The times that stood when give-till fell due: a coat is foretold anew with every reading, and a maker acts by the latest. */
+interface Due { likelyAt: number | null, p90At: number | null }
+
 function foretell({ sheet, material, learner }: Run, place: Foretelling, visits: readonly Visit[], bench: Bench, appliedAt: number) {
   const learned = learner.learn(sheet, visits, appliedAt)
-  const spans = [{ clock: place.clockAt(appliedAt), fromAt: appliedAt, toAt: null }]
   const coat = { appliedAt, size: 'normal', ground: 'primed' } as const
-  const prediction = predictCoat(learned, coat, spans, { now: appliedAt })
+  const moments = place.momentsFrom(appliedAt)
+  const due: (Due | null)[] = material.milestones.map(() => null)
+  for (const [i, now] of moments.entries()) {
+    const next = moments[i + 1] ?? Infinity
+    const { milestones } = predictCoat(learned, coat, [{ clock: place.clockAt(now, appliedAt), fromAt: appliedAt, toAt: null }], { now })
+    for (const [k, { likelyAt, p90At }] of milestones.entries()) {
+      if (due[k] === null && (p90At ?? Infinity) <= next) due[k] = { likelyAt, p90At: p90At === null ? null : Math.max(now, p90At) }
+    }
+    if (due.every(d => d !== null)) break
+  }
   const reachedAt = reachedIn(place.room, sheet, material.milestones, bench.coat(), appliedAt)
-  return { prediction, reachedAt, spans, coat }
+  return { due: due.map(d => d ?? { likelyAt: null, p90At: null }), reachedAt, coat, spans: [{ clock: place.room.known, fromAt: appliedAt, toAt: null }] }
 }
 
 function halfTested(run: Run, place: Foretelling, seed: number, parity: number) {
@@ -79,8 +101,8 @@ function halfTested(run: Run, place: Foretelling, seed: number, parity: number) 
   for (const [c, wanted] of checkpoints.entries()) {
     for (; coats < wanted; coats++) visits.push(...teach(chance, bench, place.room, run.sheet, milestones, tested, coats, place.calendar.teaching[coats]!).visits)
     const appliedAt = place.calendar.foretold[c]!
-    const { prediction, reachedAt, spans, coat } = foretell(run, place, visits, bench, appliedAt)
-    for (const [k, { likelyAt, p90At }] of prediction.milestones.entries()) {
+    const { due, reachedAt, spans, coat } = foretell(run, place, visits, bench, appliedAt)
+    for (const [k, { likelyAt, p90At }] of due.entries()) {
       count((tested[k] ? run.result.tested : run.result.untested)[c]![k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
     }
     if (wanted !== 12) continue
@@ -88,7 +110,7 @@ function halfTested(run: Run, place: Foretelling, seed: number, parity: number) 
     const way = climb(run.sheet, coat, spans)
     const factor = meanReached(run.sheet, visits)
     const miss = (at: number, k: number) => Math.abs(Math.log((at - appliedAt) / (middle[k]! - appliedAt)))
-    for (const [k, { likelyAt }] of prediction.milestones.entries()) {
+    for (const [k, { likelyAt }] of due.entries()) {
       if (!tested[k] || likelyAt === null) continue
       run.result.errors.times++
       run.result.errors.learner += miss(likelyAt, k)
@@ -106,8 +128,8 @@ function fullyTested(run: Run, place: Foretelling, seed: number) {
   const visits: Visit[] = []
   for (let coats = 0; coats < fullCoats; coats++) visits.push(...teach(chance, bench, place.room, run.sheet, milestones, every, coats, place.calendar.teaching[coats]!).visits)
   const appliedAt = place.calendar.foretold.at(-1)!
-  const { prediction, reachedAt } = foretell(run, place, visits, bench, appliedAt)
-  for (const [k, { likelyAt, p90At }] of prediction.milestones.entries()) count(run.result.full[k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
+  const { due, reachedAt } = foretell(run, place, visits, bench, appliedAt)
+  for (const [k, { likelyAt, p90At }] of due.entries()) count(run.result.full[k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
 }
 
 /** Runs so many benches of a world on a material, half of whose rungs each bench tests, and as many that test all of them. Same seed, same numbers. */

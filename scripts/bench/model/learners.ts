@@ -1,7 +1,9 @@
 import type { DryingMaterial } from '#shared/drying/types'
 import type { DryingTools } from '#shared/drying/tools'
 import type { PreparedMaterial } from '#shared/drying/material'
-import { prepareMaterial } from '#shared/drying/material'
+import { clockVariance } from '#shared/drying/bench-tests'
+import { learnBench } from '#shared/drying/learn'
+import { prepareMaterial, withLearned } from '#shared/drying/material'
 import type { Visit } from './benches'
 
 /** A way of learning from visits: gives the material made ready for the next coat. `sheet` is the material made ready without them. */
@@ -16,7 +18,17 @@ export function meanReached(sheet: PreparedMaterial, visits: readonly Visit[]): 
   return ratios.length > 0 ? ratios.reduce((sum, r) => sum + r, 0) / ratios.length : 1
 }
 
-export const learners: Record<string, Learner> = { sheet: sheetAlone }
+/** What the product does. */
+const bench: Learner = {
+  name: 'bench', says: 'the bench\'s own tests',
+  learn: (sheet, visits) => {
+    const tests = visits.map(({ rung, minutes, reached }) => ({ rung, log: Math.log(minutes / sheet.rungs[rung]!.typical), reached, weight: 1, extra: clockVariance }))
+    const speed = learnBench(sheet.rungs.map(r => r.quantiles), tests)
+    return speed.kind === 'learned' ? withLearned(sheet, speed) : sheet
+  },
+}
+
+export const learners: Record<string, Learner> = { sheet: sheetAlone, bench }
 
 export function readied(material: DryingMaterial, tools: DryingTools): PreparedMaterial {
   return prepareMaterial(material, tools)

@@ -8,7 +8,7 @@ import { readied } from './learners'
 
 /** What single tests do, worst over the rungs: shares of time, or counts. */
 export interface Probes {
-  /** Largest move of another rung's likely by one test inside a rung's own band. */
+  /** Largest move of another rung's likely by one test inside a rung's own band, but for what the order of the ladder asks. */
   inBand: number
   /** Move of the bench's speed by 20 first "reached" at 8 x typical and nothing else. */
   late: number
@@ -32,7 +32,8 @@ export function probe(material: DryingMaterial, learner: Learner, tools: DryingT
     for (const minutes of [low, typical, high]) {
       for (const reached of [true, false]) {
         const moved = likely(learner.learn(sheet, [{ coat: 0, at: appliedAt, rung, minutes, reached }], appliedAt))
-        for (const [k, m] of moved.milestones.entries()) if (k !== rung) result.inBand = Math.max(result.inBand, Math.abs((m.likelyAt! - appliedAt) / (plain.milestones[k]!.likelyAt! - appliedAt) - 1))
+        const pushed = moved.milestones[rung]!.likelyAt!
+        for (const [k, m] of moved.milestones.entries()) if (k !== rung && m.likelyAt !== pushed) result.inBand = Math.max(result.inBand, Math.abs((m.likelyAt! - appliedAt) / (plain.milestones[k]!.likelyAt! - appliedAt) - 1))
       }
     }
     const late = Array.from({ length: 20 }, (_, coat) => ({ coat, at: appliedAt, rung, minutes: 8 * typical, reached: true }))

@@ -17,7 +17,9 @@ export interface Room {
   /** Everything read, for looking back on tests. */
   known: RoomClock
   /** What was known at an instant, and nothing later. */
-  knownAt(now: number): RoomClock
+  knownAt(now: number, since?: number): RoomClock
+  /** When the air was read, ms UTC, in order. */
+  readAt: number[]
 }
 
 const usual = { tempC: 20, rh: 0.5 }
@@ -54,6 +56,7 @@ export function roomOf(chance: Chance, days: number, tools: DryingTools): Room {
     truth: roomClock(air(dense), startAt, tools),
     known: roomClock(air(sparse), startAt, tools),
     // Only a week back: a film foretold now has no use for more.
-    knownAt: now => roomClock(air(sparse.filter(r => r.at <= now && r.at > now - 7 * dayMs)), now, tools),
+    knownAt: (now, since = now) => roomClock(air(sparse.filter(r => r.at <= now && r.at > since - 7 * dayMs)), since, tools),
+    readAt: sparse.map(r => r.at),
   }
 }

@@ -1,0 +1,58 @@
+import { inArray } from 'drizzle-orm'
+import { benchSpeed } from '~~/db/schema'
+import type { Database, Transaction } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { preparedMaterials } from '~~/server/work/materials'
+import type { BenchTest } from '#shared/drying/learn'
+import { learnBench } from '#shared/drying/learn'
+import type { PreparedMaterial } from '#shared/drying/material'
+import { withLearned } from '#shared/drying/material'
+import type { DryingMaterial, TouchTest } from '#shared/drying/types'
+
+/** A test on its rung's clock, with the rows it came from. */
+export interface KeptTest extends BenchTest { testId: number, coatId: number }
+
+/** What `bench_speed.state` holds: the tests as bounds, and what they were worked out from. Derived: `relearn` writes it, nothing else. */
+export interface BenchState { signature: string, tests: KeptTest[] }
+
+/** Reads a stored state; null for none, or one that an older version wrote otherwise. */
+export function benchState(value: unknown): BenchState | null {
+  return typeof value === 'object' && value !== null && 'signature' in value && 'tests' in value && Array.isArray(value.tests) ? value as BenchState : null
+}
+
+/** How many learned materials are kept ready in the process. */
+const keptMost = 500
+const kept = new Map<string, PreparedMaterial>()
+
+/** The material as these tests have it, kept by edition and by what was learned. */
+function learnedMaterial(key: string, sheet: PreparedMaterial, tests: readonly KeptTest[]): PreparedMaterial {
+  const known = kept.get(key)
+  if (known) return known
+  const bench = learnBench(sheet.rungs.map(rung => rung.quantiles), tests)
+  const learned = bench.kind === 'learned' ? withLearned(sheet, bench) : sheet
+  if (kept.size >= keptMost) kept.clear()
+  kept.set(key, learned)
+  return learned
+}
+
+/** Whether a coat's own "not yet" stands: then what it taught the bench must not count for it a second time. */
+const ownStands = (tests: readonly TouchTest[]) => tests.some(test => !test.reached)
+
+/** The materials of a studio as its bench has them, by edition. */
+export function benchesOf(db: Database | Transaction, studioId: number, sheets: ReadonlyMap<number, DryingMaterial>) {
+  const ids = [...sheets.keys()]
+  const rows = ids.length === 0 ? [] : db.select().from(benchSpeed).where(scoped(benchSpeed, studioId, inArray(benchSpeed.materialVersionId, ids))).all()
+  const states = new Map(rows.map(row => [row.materialVersionId, benchState(row.state)]))
+  return {
+    /** The material for one coat: its own tests do not teach it, they bound it. Null for an edition that was not asked for. */
+    materialFor(versionId: number, coatId: number, own: readonly TouchTest[]): PreparedMaterial | null {
+      const sheet = sheets.get(versionId)
+      if (!sheet) return null
+      const prepared = preparedMaterials.prepare(sheet)
+      const state = states.get(versionId)
+      if (!state || state.tests.length === 0) return prepared
+      const key = `${studioId} ${versionId} ${state.signature}`
+      return ownStands(own) ? learnedMaterial(`${key} ${coatId}`, prepared, state.tests.filter(test => test.coatId !== coatId)) : learnedMaterial(key, prepared, state.tests)
+    },
+  }
+}
