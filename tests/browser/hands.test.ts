@@ -209,10 +209,10 @@ describe('the hands screen', () => {
     await page.getByText('One tap is not told yet.').waitFor()
     // Somebody else is first meanwhile, so that the tap is refused when it comes through.
     const pieces = (await piecesOf('Pestle')).map(({ id, version }) => ({ id, version }))
-    await made(helper, '/api/acts', { clientKey: 'seen-pestles-of-test', kind: 'seen', doneAt: new Date().toISOString(), pieces, body: {} })
+    await made(helper, '/api/acts', { clientKey: `seen-${++keys}-of-test`, kind: 'seen', doneAt: new Date().toISOString(), pieces, body: {} })
     await page.unroute('**/api/acts')
     await page.getByRole('button', { name: 'Tell them now' }).click()
-    const refusal = page.getByText(/^Pestles 1 and 2: /)
+    const refusal = page.getByText(/Pestles 1 and 2: Somebody else was at/)
     await refusal.waitFor()
     await page.reload()
     await refusal.waitFor()
