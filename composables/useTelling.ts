@@ -37,6 +37,10 @@ function lateTaps(told: ReturnType<typeof useToldStore>) {
       if (actId !== undefined) told.change(line.key, { state: 'told', clientKey: null, actId, rootId: actId })
     }
   })
+  // Refused late, a tap is spoken of where the untold stand: it may be from before this page was opened.
+  watch(() => untold.refused, (refused) => {
+    for (const line of told.lines) if (refused.some(({ act }) => act.clientKey === line.clientKey)) told.putAway(line.key)
+  })
   return (line: ToldLine) => {
     if (line.clientKey === null) return
     untold.drop(line.clientKey)
