@@ -51,6 +51,7 @@ export class Improve {
 
   /** One change. True when the plan is now better than it ever was. */
   step(): boolean {
+    if (this.seats.length === 0) return false
     const phase = this.count++ % roundLength
     if (phase === 0 && this.cost > this.best) this.recall()
     const sooner = phase < this.seats.length && this.seats.length * 4 < roundLength

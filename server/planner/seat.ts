@@ -159,8 +159,11 @@ export class Seat {
     if (replaced) this.swap()
     const { board, unit: { nodes }, now } = this
     for (let node = 0; node < nodes.length; node++) {
-      if (now.dropped.has(node)) continue
       const { members, starts, ends } = nodes[node]!
+      if (now.dropped.has(node)) {
+        for (const activity of members) board.placed[activity] = 0
+        continue
+      }
       const recovered = this.recovered(node) ? 1 : 0
       for (let i = 0; i < members.length; i++) {
         const activity = members[i]!
@@ -177,10 +180,11 @@ export class Seat {
     return this.now.missed.size > 0 && this.unit.into[node]!.some(edge => this.now.missed.has(edge))
   }
 
-  /** Penalties of the windows it misses. */
+  /** Penalties of the windows it misses between what has a place. */
   get penalty(): number {
+    const { missed, dropped } = this.now
     let sum = 0
-    if (this.now.missed.size > 0) for (const edge of this.now.missed) sum += edge.recovery!.penalty
+    if (missed.size > 0) for (const edge of missed) if (!dropped.has(edge.to) && !dropped.has(edge.from)) sum += edge.recovery!.penalty
     return sum
   }
 }

@@ -57,7 +57,7 @@ function* tries(model: Model, pieces: readonly (readonly Component[])[]): Genera
 interface Best { layout: Layout, units: Unit[], unplaced: number, cost: number }
 
 /** So many plans are built by rules before the best of them is changed: fewer when each takes long or only few are asked for. */
-const triesFor = (size: number, schedules: number) => Math.max(2, Math.min(28, Math.ceil(20_000 / (size + 1)), Math.ceil(schedules / 3)))
+const triesFor = (size: number, schedules: number) => Math.max(2, Math.min(28, Math.max(4, Math.ceil(6000 / (size + 1))), Math.ceil(schedules / 3)))
 
 /** A search in steps: plans by rules, then, where everything has a start, changes to the best of them; else other orders. */
 class Search {
