@@ -1,18 +1,22 @@
 import { and, asc, desc, eq } from 'drizzle-orm'
-import { audit, benchSpeed, coat, material, materialVersion, tin, touchTest } from '~~/db/schema'
+import { audit, benchSpeed, coat, material, materialFigure, materialVersion, room, studio, tin, touchTest } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
+import { roomAirs } from '~~/server/work/air'
 import { benchState } from '~~/server/work/benches'
 import type { KeptTest } from '~~/server/work/benches'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { predictPieces } from '~~/server/work/predict'
+import { airAt } from '#shared/air/room'
 import { learnBench } from '#shared/drying/learn'
 import type { PreparedRung } from '#shared/drying/material'
 import { withLearned } from '#shared/drying/material'
+import { potLifeAt } from '#shared/drying/pot-life'
+import { trackRoom } from '#shared/drying/tools'
 import type { BandWire, LearnedRungWire, LearnedWire } from '#shared/schemas/learned'
 import { milestoneNames } from '#shared/terms'
 
@@ -25,7 +29,7 @@ function newestVersion(db: Database | Transaction, studioId: number, materialId:
 }
 
 /** What this studio's touch tests teach about a material's newest edition. */
-export function learnedPart(db: Database, studioId: number, materialId: number): LearnedWire | Refusal {
+export function learnedPart(db: Database, studioId: number, materialId: number, now: number): LearnedWire | Refusal {
   const versionId = newestVersion(db, studioId, materialId)
   const sheet = versionId === null ? undefined : dryingMaterials(db, studioId, [versionId]).get(versionId)
   if (versionId === null || !sheet) return absent()
@@ -41,7 +45,22 @@ export function learnedPart(db: Database, studioId: number, materialId: number):
     coverage: coverageOf(db, studioId, versionId, row?.resetAt ?? 0),
     resetAt: iso(row?.resetAt),
     newestTinAt: iso(db.select({ openedAt: tin.openedAt }).from(tin).where(scoped(tin, studioId, eq(tin.materialId, materialId))).orderBy(desc(tin.openedAt)).get()?.openedAt),
+    potLife: potLifeOf(db, studioId, versionId, sheet.reference.tempC, now),
   }
+}
+
+/** How long a mixed quantity lasts in each room that was read within a day: its sheet's pot life at the room's warmth. */
+function potLifeOf(db: Database, studioId: number, versionId: number, referenceC: number, now: number): LearnedWire['potLife'] {
+  const figure = db.select().from(materialFigure).where(scoped(materialFigure, studioId, eq(materialFigure.versionId, versionId), eq(materialFigure.name, 'pot life'))).get()
+  const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
+  if (!figure || !owner) return []
+  const airs = roomAirs(db, owner, now)
+  return db.select({ id: room.id, name: room.name }).from(room).where(scoped(room, studioId)).orderBy(asc(room.name)).all().flatMap(({ id, name }) => {
+    const known = airs.get(id)
+    const air = known && airAt(trackRoom(preparedMaterials.tools, known, now), now)
+    if (!air || air.assumed || (air.hoursSinceReading ?? Infinity) > 24 || !(air.tempC >= -20 && air.tempC <= 60)) return []
+    return [{ room: name, tempC: air.tempC, minutes: potLifeAt(figure.typical, referenceC, air.tempC), sheetMinutes: figure.typical }]
+  })
 }
 
 function bandOf({ typical, quantiles: { values } }: PreparedRung): BandWire {
@@ -87,7 +106,7 @@ export function resetLearned(db: Database, studioId: number, who: Membership, ma
     taughtAnew(tx, studioId, who, id, { resetAt }, now)
     return { ok: true }
   })
-  return done.ok ? learnedPart(db, studioId, materialId) : done
+  return done.ok ? learnedPart(db, studioId, materialId, now) : done
 }
 
 /** A new tin is open: tests of the ones before count half from now on. */
@@ -98,5 +117,5 @@ export function openTin(db: Database, studioId: number, who: Membership, materia
     taughtAnew(tx, studioId, who, id, { tinOpenedAt: now }, now)
     return { ok: true }
   })
-  return done.ok ? learnedPart(db, studioId, materialId) : done
+  return done.ok ? learnedPart(db, studioId, materialId, now) : done
 }

@@ -32,8 +32,10 @@ function materialsOf(tx: Transaction, studioId: number, request: ActRequest, bod
   if (typeof body.step === 'string' && films.length === 0) return []
   const versionIds = typeof body.materialVersionId === 'number' ? [body.materialVersionId] : [...new Set(films.map(step => step.versionId))]
   const known = versionIds.flatMap(id => id ?? [])
-  const rows = known.length === 0 ? [] : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId))
-    .where(scoped(materialVersion, studioId, inArray(materialVersion.id, known))).all()
+  const rows = known.length === 0
+    ? []
+    : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId))
+        .where(scoped(materialVersion, studioId, inArray(materialVersion.id, known))).all()
   return rows.length < Math.max(1, versionIds.length) ? [...rows, { name: null, solvent: null, isocyanate: false }] : rows
 }
 

@@ -70,8 +70,10 @@ function keepOuts(db: Database, studioId: number, now: number) {
 /** The starts with their call, and who has seen it. */
 function startStates(db: Database, studioId: number, starts: Map<number, StartRow>, names: Map<number, string>): Map<number, StartState> {
   const ids = [...starts.values()].map(row => row.id)
-  const calls = ids.length === 0 ? [] : db.select({ startId: cause.subjectId, reminderId: reminder.id }).from(cause).innerJoin(reminder, eq(reminder.causeId, cause.id))
-    .where(scoped(cause, studioId, eq(cause.kind, 'vapour'), inArray(cause.subjectId, ids))).orderBy(desc(reminder.id)).all()
+  const calls = ids.length === 0
+    ? []
+    : db.select({ startId: cause.subjectId, reminderId: reminder.id }).from(cause).innerJoin(reminder, eq(reminder.causeId, cause.id))
+        .where(scoped(cause, studioId, eq(cause.kind, 'vapour'), inArray(cause.subjectId, ids))).orderBy(desc(reminder.id)).all()
   const looks = calls.length === 0 ? [] : db.select().from(seen).where(scoped(seen, studioId, inArray(seen.reminderId, calls.map(each => each.reminderId)))).orderBy(asc(seen.at)).all()
   const here = db.select({ id: member.id, name: person.name }).from(member).innerJoin(person, eq(person.id, member.personId)).where(scoped(member, studioId, isNull(member.leftAt))).orderBy(asc(member.id)).all()
   return new Map([...starts].map(([roomId, row]) => {

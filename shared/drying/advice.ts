@@ -1,15 +1,17 @@
 import type { Advice, CoatCase, CoatPrediction } from '#shared/drying/types'
 import type { AirSpan, Climb } from '#shared/drying/ladder'
 import { dampCeiling, inSpans } from '#shared/drying/refusals'
-import { firstThinDewMargin } from '#shared/drying/spells'
+import { firstCold, firstThinDewMargin } from '#shared/drying/spells'
 import { lastBefore, trackDewPoint, trackTemp } from '#shared/air/room'
-import { ratioOfVapour, tabledSaturation } from '#shared/air/tables'
+import { ratioOfVapour, tabledDewPoint, tabledSaturation } from '#shared/air/tables'
 import { localDay, localTimeOfDay } from '#shared/air/zone'
 import type { AdviceFacts } from '#shared/words/advice'
 import { adviceText, whenText } from '#shared/words/advice'
 
 /** Gap to the dew point under which alcohol and lacquer films haze (20 F, a finisher's rule). */
 const blushGapC = 11.1
+/** How long an oxidising film had better not be covered (a maker of tung-oil varnish: not within a day, better two). */
+const openForMs = 48 * 3_600_000
 /** Coat and ground together slower than this are outside what anybody has measured. */
 const measuredSlowness = 3
 
@@ -24,10 +26,25 @@ function said(span: AirSpan, at: number, now: number): string {
   return whenText(localDay(zone, at), Math.floor(localTimeOfDay(zone, at) / 60_000), localDay(zone, now))
 }
 
-function coldAdvice({ way, spans, prediction, now }: Asked): AdviceFacts[] {
+/**
+ * A joint needs its warmth for longer than its clamps: the first cold after it is out of them and before it has its strength (C16: look at
+ * the night ahead, not at the moment). Only what is still to come: a joint that kept together through a cold night has shown so.
+ */
+function coldStrength({ way, spans, prediction, now }: Asked): AdviceFacts[] {
+  const { minTempC } = way.material.material
+  const strength = prediction.milestones.find(m => m.name === 'full-strength')
+  if (minTempC === null || !strength || strength.reachedAt !== null) return []
+  const until = strength.likelyAt ?? Infinity
+  const from = Math.max(now, way.appliedAt)
+  const at = from < until ? inSpans(spans, from, until, 0, (span, start) => firstCold(span.clock, minTempC, start)) : Infinity
+  return at < until ? [{ code: 'cold-before-strength', minTempC, when: said(spanAt(spans, at), at, now) }] : []
+}
+
+function coldAdvice(asked: Asked): AdviceFacts[] {
+  const { way, spans, prediction, now } = asked
   const { chilledAt } = prediction
   const { minTempC } = way.material.material
-  if (chilledAt === null || minTempC === null) return []
+  if (chilledAt === null || minTempC === null) return coldStrength(asked)
   const when = said(spanAt(spans, chilledAt), chilledAt, now)
   return [{ code: chilledAt > now ? 'below-minimum-ahead' : 'chilled', minTempC, when }]
 }
@@ -60,12 +77,33 @@ function standingAdvice({ way, coat, spans, prediction, now }: Asked): AdviceFac
   const from = Math.max(now, coat.appliedAt)
   if (lastBefore(spanAt(spans, from).clock.track.times, from) < 0) facts.push({ code: 'air-assumed' })
   const reasons = prediction.milestones.map(m => m.reason)
-  if (reasons.includes('too-damp')) facts.push({ code: 'too-damp', ceiling: Math.min(way.material.material.maxRh ?? dampCeiling, dampCeiling) })
+  if (reasons.includes('too-damp')) facts.push(dampAdvice(way, spanAt(spans, from), from))
+  const coveredTill = coveredEarly(way, coat)
+  if (coveredTill !== null && now < coveredTill) facts.push({ code: 'covered-early', when: said(spanAt(spans, from), coveredTill, now) })
   if (reasons.includes('outside-sheet')) facts.push({ code: 'outside-sheet' })
   const slowness = Math.max(...way.slowness)
   if (slowness > measuredSlowness) facts.push({ code: 'outside-measured', slowness })
   if ((coat.notes ?? []).some(n => n.kind === 'sun' || n.kind === 'warm air')) facts.push({ code: 'forced-drying' })
   return facts
+}
+
+/** Warmest a room is told to be made; beyond it only taking water out helps. */
+const warmestC = 28
+
+/** What the room would need: with its water as it is, the temperature at which it is just under the ceiling. */
+function dampAdvice(way: Climb, span: AirSpan, at: number): AdviceFacts {
+  const ceiling = Math.min(way.material.material.maxRh ?? dampCeiling, dampCeiling)
+  const { track, tools } = span.clock
+  const held = tabledSaturation(tools.air, trackDewPoint(track, at))
+  const warmC = Math.ceil(tabledDewPoint(tools.air, held / (ceiling - 0.01)))
+  return { code: 'too-damp', ceiling, warmC: warmC > trackTemp(track, at) && warmC <= warmestC ? warmC : null }
+}
+
+/** Until when an oxidising film that is covered now had better lie open: two days (C22). Null when it is not covered, or takes no air. */
+function coveredEarly(way: Climb, coat: CoatCase): number | null {
+  const till = coat.appliedAt + openForMs
+  const covered = (coat.notes ?? []).some(n => n.kind === 'covered' && n.fromAt < till && n.toAt === null)
+  return covered && way.material.rungs.some(r => r.driver === 'oxidation') ? till : null
 }
 
 /** What the air has to say about a coat, worst first: cold and dew before cautions, what stays true last. */

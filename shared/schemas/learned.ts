@@ -23,4 +23,6 @@ export interface LearnedWire {
   coverage: { early: number, of: number }
   resetAt: string | null
   newestTinAt: string | null
+  /** What is mixed, in each room as it is now; empty without a pot life on the sheet. */
+  potLife: { room: string, tempC: number, minutes: number, sheetMinutes: number }[]
 }

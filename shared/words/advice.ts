@@ -4,13 +4,15 @@ export type AdviceFacts =
   | { code: 'dew-margin', when: string | null }
   | { code: 'below-minimum-ahead', minTempC: number, when: string }
   | { code: 'chilled', minTempC: number, when: string }
-  | { code: 'too-damp', ceiling: number }
+  | { code: 'cold-before-strength', minTempC: number, when: string }
+  | { code: 'too-damp', ceiling: number, warmC: number | null }
   | { code: 'dry-air', floor: number }
   | { code: 'blush', gapC: number }
   | { code: 'outside-measured', slowness: number }
   | { code: 'outside-sheet' }
   | { code: 'fan-early', when: string | null }
   | { code: 'forced-drying' }
+  | { code: 'covered-early', when: string }
 
 export type AdviceCode = AdviceFacts['code']
 
@@ -30,14 +32,21 @@ export function adviceText(facts: AdviceFacts): string {
       : `Less than 3 °C above the dew point from ${facts.when}: bring it in by then.`
     case 'below-minimum-ahead': return `The room falls under ${degrees(facts.minTempC)} at ${facts.when}, while this is still wet: bring it in by then.`
     case 'chilled': return `Under ${degrees(facts.minTempC)} from ${facts.when} while it was wet: test it or strip it before going on.`
-    case 'too-damp': return `At ${percent(facts.ceiling)} humidity or more no time is promised: dry or warm the room to get under it.`
+    case 'cold-before-strength': return `The room falls under ${degrees(facts.minTempC)} at ${facts.when}, before the joint has its strength: glue that cold dries weak. Keep it warm until then.`
+    case 'too-damp': return `At ${percent(facts.ceiling)} humidity or more no time is promised: dry the room${facts.warmC === null ? '' : `, or warm it to ${degrees(facts.warmC)}`}, to get under it.`
     case 'dry-air': return `The air holds less than ${Number((facts.floor * 1000).toFixed(1))} g of water in a kilogram: this cures from moisture and hardly moves.`
     case 'blush': return `The air is ${degrees(facts.gapC)} above its dew point: the film may haze. Wait, put retarder in, or go on and watch for haze.`
     case 'outside-measured': return `This coat is ${Number(facts.slowness.toFixed(1))} times slower than the sheet's: outside what anybody has measured.`
     case 'outside-sheet': return 'Over three times the longest on the sheet: something is wrong with this coat.'
     case 'fan-early': return facts.when === null ? 'Keep the fan off until it is tack-free.' : `Keep the fan off until it is tack-free, ${facts.when}.`
+    case 'covered-early': return `It takes air to harden: do not cover it before ${facts.when}, two days after it went on.`
     case 'forced-drying': return 'Sun or warm air on it: the times are less sure, and nothing is learned from this coat.'
   }
+}
+
+/** How long a mixed quantity lasts at the room's warmth, against its sheet. Minutes. */
+export function potLifeText({ room, minutes, sheetMinutes, tempC }: { room: string, minutes: number, sheetMinutes: number, tempC: number }): string {
+  return `${room}, ${degrees(tempC)}: what is mixed lasts about ${Math.round(minutes)} min; the sheet says ${Math.round(sheetMinutes)}. A deep pot goes off sooner.`
 }
 
 /** Why a film moves on as it does: "0.41 of sheet speed: 78 % humidity, 18 °C". */

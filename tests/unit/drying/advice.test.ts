@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import type { AdviceFacts } from '#shared/words/advice'
 import { adviceText, rateText, whenText } from '#shared/words/advice'
 import type { CoatCase, RoomAir } from '#shared/drying/types'
+import { potLifeAt } from '#shared/drying/pot-life'
 import { at, coatAt, hourMs, materialWith, predictIn, read, roomWith, rung, steadyRoom } from '../../helpers/drying'
 
 const start = at('2026-03-10T09:00:00Z')
@@ -45,10 +46,64 @@ describe('advice from the air', () => {
   })
 })
 
+describe('the night ahead', () => {
+  const glue = materialWith({ minTempC: 8.3, milestones: [rung('out-of-clamps', 'joint', 30, 45, 60), rung('full-strength', 'joint', 1440, 1440, 2160)] })
+  const atFive = at('2026-03-10T17:00:00Z')
+  const advised = (readings: RoomAir['readings'], over: Partial<RoomAir> = {}) => predictIn(roomWith({ heated: false, readings, ...over }), glue, coatAt(atFive), atFive).advice
+
+  it('C16: a clamp put on at five in an unheated shed is told that the night passes the glue\'s minimum', () => {
+    // 11 C at five, a drop of 4 by six in the morning: 8.3 C is passed where (1 - cos(pi h / 12)) / 2 = 2.7 / 4, h = 7.4 hours after 18:00.
+    const told = advised([read('2026-03-10T17:00:00Z', 11, 0.5)]).find(a => a.code === 'cold-before-strength')
+    expect(told?.text).toMatch(/^The room falls under 8.3 °C at Wed 01:2\d, before the joint has its strength/)
+    expect(advised([read('2026-03-10T17:00:00Z', 11, 0.5)], { heated: true, nightDropC: 0 }).map(a => a.code)).toEqual([])
+    expect(advised([read('2026-03-10T17:00:00Z', 14, 0.5)]).map(a => a.code)).toEqual([])
+  })
+
+  it('follows the room\'s own pattern once it has been read on three days', () => {
+    // Three nights of 6 degrees below the evening: now 14 C at five is not enough.
+    const days = [7, 8, 9].flatMap(day => [['06', 8], ['12', 16], ['17', 14]].map(([hour, tempC]) => read(`2026-03-0${day}T${hour}:00:00Z`, Number(tempC), 0.5)))
+    expect(advised([...days, read('2026-03-10T17:00:00Z', 14, 0.5)]).map(a => a.code)).toContain('cold-before-strength')
+  })
+
+  it('a panel in the yard is to be brought in by a time', () => {
+    const slow = materialWith({ minTempC: null, milestones: [rung('dry-to-handle', 'oxidation', 1000, 2000, 4000)] })
+    // 14 C at 75 % has its dew point at 9.6 C: 3 degrees above it is 12.6, which a night drop of 6 passes in the evening.
+    const yard = roomWith({ heated: false, nightDropC: 6, readings: [read('2026-03-10T17:00:00Z', 14, 0.75)] })
+    expect(predictIn(yard, slow, coatAt(atFive), atFive).advice.find(a => a.code === 'dew-margin')?.text).toMatch(/bring it in by then/)
+  })
+})
+
+describe('what a room would need', () => {
+  it('names the warmth that brings the same air under the ceiling, or only drying where no warmth would', () => {
+    // 20 C at 88 % holds es(20) x 0.88 = 20.6 hPa; under 85 % it needs es = 24.5 hPa: 21 C.
+    const text = (tempC: number, rh: number) => predictIn(steadyRoom(tempC, rh, start), materialWith(), coatAt(start)).advice.find(a => a.code === 'too-damp')?.text
+    expect(text(20, 0.88)).toMatch(/warm it to 21 °C/)
+    expect(text(27, 0.95)).not.toMatch(/warm it/)
+  })
+
+  it('C22: an oil that is covered within two days is told so, and water paint is not', () => {
+    const oil = materialWith({ milestones: [rung('dry-to-handle', 'oxidation', 1000, 2000, 4000)] })
+    const covered = { notes: [{ kind: 'covered' as const, fromAt: start, toAt: null }] }
+    expect(codes(steadyRoom(20, 0.5, start), covered, oil)).toContain('covered-early')
+    expect(codes(steadyRoom(20, 0.5, start), covered, oil, start + 49 * hourMs)).not.toContain('covered-early')
+    expect(codes(steadyRoom(20, 0.5, start), covered)).not.toContain('covered-early')
+  })
+})
+
+describe('pot life', () => {
+  it('C18: 10.5 min at 22 C is about 5 at 32 C and about 20 at 12 C', () => {
+    expect(potLifeAt(10.5, 22, 22)).toBe(10.5)
+    expect(potLifeAt(10.5, 22, 32)).toBeCloseTo(5, 0)
+    expect(potLifeAt(10.5, 22, 12)).toBeGreaterThan(18)
+    expect(potLifeAt(10.5, 22, 12)).toBeLessThan(24.5)
+    expect(() => potLifeAt(10, 22, Number.NaN)).toThrow(/tempC/)
+  })
+})
+
 describe('its sentences', () => {
   const all: AdviceFacts[] = [
     { code: 'air-assumed' }, { code: 'dew-margin', when: null }, { code: 'dew-margin', when: '03:10' }, { code: 'below-minimum-ahead', minTempC: 10, when: '03:10' },
-    { code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' }, { code: 'too-damp', ceiling: 0.85 }, { code: 'dry-air', floor: 0.006 }, { code: 'blush', gapC: 8.37 },
+    { code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' }, { code: 'too-damp', ceiling: 0.85, warmC: 23 }, { code: 'cold-before-strength', minTempC: 8.3, when: '23:40' }, { code: 'covered-early', when: 'Thu 09:00' }, { code: 'dry-air', floor: 0.006 }, { code: 'blush', gapC: 8.37 },
     { code: 'outside-measured', slowness: 4.5 }, { code: 'outside-sheet' }, { code: 'fan-early', when: null }, { code: 'fan-early', when: '10:20' }, { code: 'forced-drying' },
   ]
 

@@ -6,5 +6,5 @@ import { idParams } from '#shared/schemas/common'
 export default defineStudioHandler({
   may: 'read the studio',
   params: idParams,
-  run: ({ db, studio, params }) => learnedPart(db, studio.id, params.id),
+  run: ({ db, studio, params, now }) => learnedPart(db, studio.id, params.id, now),
 })

@@ -40,7 +40,7 @@ function threeCovers() {
     return { likely: row.likelyAt! - on.endedAt, p98: row.p98At! - on.endedAt }
   }
   const learned = (): LearnedWire => {
-    const part = learnedPart(studio.db, studio.studioId, materialId)
+    const part = learnedPart(studio.db, studio.studioId, materialId, now)
     if (isRefusal(part)) throw new Error('refused')
     return part
   }
