@@ -2,9 +2,10 @@ import { cpus } from 'node:os'
 import { benchBoard } from './bench/board'
 import { benchPlanner } from './bench/planner'
 import { benchPredict } from './bench/predict'
+import { benchStart } from './bench/start'
 import { benchVapour } from './bench/vapour'
 
-const benches: Record<string, () => string[] | Promise<string[]>> = { board: benchBoard, planner: benchPlanner, predict: benchPredict, vapour: benchVapour }
+const benches: Record<string, () => string[] | Promise<string[]>> = { board: benchBoard, planner: benchPlanner, predict: benchPredict, start: benchStart, vapour: benchVapour }
 
 const usage = `npm run bench [-- NAME ...]
 

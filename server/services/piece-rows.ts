@@ -72,7 +72,7 @@ type Window = [ordinal: number, opensAt: number | null, shutsAt: number | null]
 type Target = [partId: number, face: string | null, layer: number]
 type Doubt = [cause: DoubtCause, fromAt: number]
 
-// A few thousand rungs as rows of their own take twice as long, and so do lists that SQLite has to sort: they are sorted here.
+// A few thousand rungs as rows of their own take twice as long, and so does what SQLite has to sort: rows and lists are sorted here.
 const coatColumns: Columns<CoatRow> = {
   id: 'coat.id', pieceId: 'coat.piece_id', actId: 'coat.act_id', kind: 'coat.kind', versionId: 'coat.material_version_id', beganAt: 'coat.began_at', endedAt: 'coat.ended_at', hold: 'coat.hold', outAt: 'coat.out_at', stepId: 'turn.step_id', step: 'step.name',
   rungs: '(select json_group_array(json_array(ordinal, milestone, likely_at, p90_at, p98_at, reached_at, reason)) from prediction where coat_id = coat.id)',
@@ -85,8 +85,8 @@ const inOrder = <Row extends [ordinal: number, ...unknown[]]>(json: string) => (
 /** Films that can still change an answer, by the partial index that holds nothing else: SQLite left to itself takes another. */
 function readFilms(db: Reader, studioId: number, only: readonly number[] | null) {
   const rows = read(db, coatColumns, sql`from coat indexed by coat_live left join turn on turn.id = coat.turn_id left join piece_step step on step.id = turn.step_id
-    where coat.studio_id = ${studioId} and coat.settled_at is null and coat.stripped_at is null ${among(sql`coat.piece_id`, only)} order by coat.ended_at`)
-  return rows.map(row => ({ ...row, rungs: inOrder<Rung>(row.rungs), windows: inOrder<Window>(row.windows), targets: JSON.parse(row.targets) as Target[], doubts: JSON.parse(row.doubts) as Doubt[] }))
+    where coat.studio_id = ${studioId} and coat.settled_at is null and coat.stripped_at is null ${among(sql`coat.piece_id`, only)}`)
+  return rows.sort((a, b) => a.endedAt - b.endedAt).map(row => ({ ...row, rungs: inOrder<Rung>(row.rungs), windows: inOrder<Window>(row.windows), targets: JSON.parse(row.targets) as Target[], doubts: JSON.parse(row.doubts) as Doubt[] }))
 }
 
 interface StepRow { id: number, pieceId: number, key: string, name: string, kind: StepKind, origin: StepOrigin, status: StepStatus, asideReason: string | null, hold: Hold | null, untilEnough: 0 | 1, materialVersionId: number | null, setupMin: number, pieceMin: number, cleanMin: number, dust: DustClass }

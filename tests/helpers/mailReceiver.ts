@@ -8,13 +8,15 @@ interface Manners {
   onMail?: () => void | Promise<void>
   /** An address this server does not know. */
   unknown?: string
+  /** Where it listens; a free port when not given. */
+  port?: number
 }
 
 /** An error that a mail server answers with this code. */
 export const refusal = (code: number, text: string) => Object.assign(new Error(text), { responseCode: code })
 
 /** A mail server of the test's own on loopback, without TLS or sign-in. */
-export async function mailService({ onMail, unknown }: Manners = {}) {
+export async function mailService({ onMail, unknown, port: wanted = 0 }: Manners = {}) {
   const received: ReceivedMail[] = []
   const server = new SMTPServer({
     authOptional: true, disabledCommands: ['STARTTLS', 'AUTH'], logger: false,
@@ -34,7 +36,7 @@ export async function mailService({ onMail, unknown }: Manners = {}) {
   })
   // A client that is killed in the middle is no fault of the server's.
   server.on('error', () => undefined)
-  await new Promise<void>(resolve => server.listen(0, '127.0.0.1', () => resolve()))
+  await new Promise<void>(resolve => server.listen(wanted, '127.0.0.1', () => resolve()))
   const { port } = server.server.address() as AddressInfo
   return { port, received, close: () => new Promise<void>(resolve => server.close(() => resolve())) }
 }

@@ -37,8 +37,7 @@ async function readAll(request: IncomingMessage) {
 }
 
 /** A push service of the test's own on loopback. `answer` gives the status by path and message, 201 by default, when it gets round to it. */
-export async function pushService(answer: (path: string, text: string) => number | Promise<number> = () => 201) {
-  const browser = pushBrowser()
+export async function pushService(answer: (path: string, text: string) => number | Promise<number> = () => 201, { browser = pushBrowser(), port = 0 } = {}) {
   const received: ReceivedPush[] = []
   const server = createServer((request, response) => {
     void readAll(request).then(async (message) => {
@@ -49,7 +48,7 @@ export async function pushService(answer: (path: string, text: string) => number
       response.writeHead(status, status >= 300 && status < 400 ? { location: '/elsewhere' } : {}).end()
     })
   })
-  await new Promise<void>(resolve => server.listen(0, '127.0.0.1', resolve))
+  await new Promise<void>(resolve => server.listen(port, '127.0.0.1', resolve))
   const origin = `http://127.0.0.1:${(server.address() as AddressInfo).port}`
   const close = () => new Promise<void>((resolve) => {
     server.closeAllConnections()

@@ -1,5 +1,7 @@
 import { spawn } from 'node:child_process'
 import { mkdtempSync, rmSync } from 'node:fs'
+import { createServer } from 'node:net'
+import type { AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 
@@ -56,4 +58,13 @@ export async function startServer(settings: Record<string, string> = {}, folder?
     if (!folder) rmSync(own, { recursive: true, force: true })
   }
   return { origin, folder: own, databaseFile: join(own, 'stillwet.db'), log: () => log, stop, kill: () => end('SIGKILL') }
+}
+
+/** A port of this machine on which nobody listens. */
+export async function freePort() {
+  const probe = createServer()
+  await new Promise<void>(resolve => probe.listen(0, '127.0.0.1', resolve))
+  const { port } = probe.address() as AddressInfo
+  await new Promise<void>(resolve => probe.close(() => resolve()))
+  return port
 }

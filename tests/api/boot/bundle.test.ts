@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
+import { makersIn } from '../../outside/makers'
 import { filesBelow } from '../../unit/codebase/files'
 
 const files = filesBelow('.output/public', /\.js$/)
@@ -18,5 +19,15 @@ describe('what the browser is given', () => {
   })
   it('has the service worker at its root', () => {
     expect(files).toContain('.output/public/sw.js')
+  })
+})
+
+describe('names of makers', () => {
+  it('stand nowhere in what was built', () => {
+    // Without node_modules: what came from other people's packages is theirs to word.
+    const built = filesBelow('.output', /\.(m?js|css|json|html|svg|txt|webmanifest)$/)
+    expect(built.some(file => file.includes('/server/chunks/'))).toBe(true)
+    expect(built.some(file => file.includes('/public/_nuxt/'))).toBe(true)
+    expect(built.flatMap(file => makersIn(readFileSync(file, 'utf8')).map(name => `${file}: ${name}`))).toEqual([])
   })
 })

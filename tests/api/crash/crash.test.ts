@@ -1,10 +1,8 @@
 import { mkdtempSync, rmSync } from 'node:fs'
-import { createServer } from 'node:net'
-import type { AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { startServer } from '../../helpers/server'
+import { freePort, startServer } from '../../helpers/server'
 import { firstStudio } from '../../helpers/sign-in'
 import type { Visitor } from '../../helpers/sign-in'
 import { roomOf } from '../access/rows'
@@ -32,14 +30,6 @@ const sleep = (ms: number) => new Promise<void>(resolve => setTimeout(resolve, m
 async function until(holds: () => boolean, ms: number) {
   for (const end = Date.now() + ms; !holds() && Date.now() < end;) await sleep(50)
   return holds()
-}
-
-async function freePort() {
-  const probe = createServer()
-  await new Promise<void>(resolve => probe.listen(0, '127.0.0.1', resolve))
-  const { port } = probe.address() as AddressInfo
-  await new Promise<void>(resolve => probe.close(() => resolve()))
-  return port
 }
 
 /** A zone in which it is between ten and eleven now: no evening comes near, whenever the test runs. */
