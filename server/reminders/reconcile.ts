@@ -49,9 +49,7 @@ function standingCalls(tx: Transaction, studioId: number, wanted: readonly Wante
 
 function keep(tx: Transaction, row: ReminderRow, call: WantedReminder, done: Reconciled) {
   if (row.status === 'withdrawn') {
-    const wasSent = tx.select({ id: delivery.id }).from(delivery).where(and(eq(delivery.reminderId, row.id), inArray(delivery.status, ['sending', 'accepted', 'unknown']))).get()
-    tx.update(reminder).set({ ...wordsOf(call), status: wasSent ? 'sent' : 'due', leaseUntil: null }).where(eq(reminder.id, row.id)).run()
-    if (!wasSent) tx.delete(delivery).where(eq(delivery.reminderId, row.id)).run()
+    revive(tx, row, call)
     done.revived += 1
     return
   }
@@ -60,6 +58,15 @@ function keep(tx: Transaction, row: ReminderRow, call: WantedReminder, done: Rec
   if (row.dueAt === words.dueAt && row.title === words.title && row.body === words.body && row.path === words.path) return
   tx.update(reminder).set(words).where(eq(reminder.id, row.id)).run()
   if (row.dueAt !== words.dueAt) done.moved += 1
+}
+
+/** A withdrawn call is wanted again: whom it had not reached by then is called now, under the same id, and nobody twice. */
+function revive(tx: Transaction, row: ReminderRow, call: WantedReminder) {
+  const own = eq(delivery.reminderId, row.id)
+  const wasSent = tx.select({ id: delivery.id }).from(delivery).where(and(own, inArray(delivery.status, ['sending', 'accepted', 'unknown']))).get()
+  const unmade = and(own, eq(delivery.status, 'failed'), eq(delivery.problem, callWords.delivery.notNeeded))
+  const { changes } = tx.delete(delivery).where(wasSent ? unmade : own).run()
+  tx.update(reminder).set({ ...wordsOf(call), status: wasSent && changes === 0 ? 'sent' : 'due', leaseUntil: null }).where(eq(reminder.id, row.id)).run()
 }
 
 const wordsOf = ({ dueAt, title, body, path }: WantedReminder) => ({ dueAt, title, body, path })

@@ -52,6 +52,24 @@ describe('reconciling', () => {
     expect(sent).toHaveLength(2)
   })
 
+  it('calls those it had not reached when it is wanted again, and nobody twice', async () => {
+    const { db, studioId } = openStudio()
+    const network = { gone: true }
+    const { channels, sent } = fakeChannels(to => network.gone && to.to.channel === 'mail' && to.to.address.startsWith('mark') ? { kind: 'unreachable', problem: 'No network.', retryAfterMs: null } : { kind: 'accepted' })
+    reconcile(db, studioId, [call()], noon)
+    await tick(db, noon, channels)
+    const ids = () => db.select({ id: delivery.stableId }).from(delivery).all().map(row => row.id).sort()
+    const before = ids()
+    reconcile(db, studioId, [], noon + minutes(1))
+    network.gone = false
+    sent.splice(0)
+    reconcile(db, studioId, [call()], noon + minutes(2))
+    await tick(db, noon + minutes(2), channels)
+    expect(sent.map(one => one.to.channel === 'mail' && one.to.address)).toEqual(['mark@example.test'])
+    expect(ids()).toEqual(before)
+    expect(db.select().from(reminder).all()).toMatchObject([{ status: 'sent' }])
+  })
+
   it('leaves another studio alone', () => {
     const { db, studioId } = openStudio()
     reconcile(db, studioId, [call()], noon)
