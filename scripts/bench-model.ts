@@ -4,14 +4,16 @@ import type { DryingMaterial } from '#shared/drying/types'
 import { findLibraryMaterial } from '#shared/library/index'
 import { dryingMaterial } from '#shared/library/types'
 import { runCell } from './bench/model/cell'
-import { learners } from './bench/model/learners'
+import { learners, readied } from './bench/model/learners'
+import { bandPicture, earlyPicture, nightPicture, writePictures } from './bench/model/pictures'
 import { probe } from './bench/model/probes'
 import { rungLines, summaryLines } from './bench/model/table'
 import { worlds } from './bench/model/worlds'
 
-const usage = `npm run bench:model [-- --benches N] [--learner NAME] [--seed N] [--worlds a,b]
+const usage = `npm run bench:model [-- --benches N] [--learner NAME] [--seed N] [--worlds a,b] [--pictures FOLDER]
 
-Measures how well a bench's own touch tests make its times right, in worlds whose truth is known. Prints every bar.
+Measures how well a bench's own touch tests make its times right, in worlds whose truth is known. Prints every bar;
+with --pictures it also draws what docs/model.md shows.
 Learners: ${Object.keys(learners).join(', ')}. Default: 2,000 benches a cell, the last learner.`
 
 /** Four materials, by four ways of hardening, that a thumb can follow to the end: rungs of weeks are left out, and so are limits, which are the refusals' part. */
@@ -57,6 +59,8 @@ function main(args: readonly string[]): number {
     console.log(`  ${name.padEnd(24)} one test in band moves another rung ${(100 * inBand).toFixed(1)}% (bar 10)${inBand <= 0.1 ? '' : '!'}; 20 late ones move the speed ${(100 * late).toFixed(1)}% (bar 3)${late <= 0.03 ? '' : '!'}; far out: ${disorder} out of order, ${nulls} nulls without cause, give-till at least ${(100 * leastSpan).toFixed(0)}% further on`)
   }
   for (const line of rungLines(cells)) console.log(line)
+  const folder = optionOf(args, '--pictures', '')
+  if (folder !== '') writePictures(folder, { 'model-early.svg': earlyPicture(cells, chosen), 'model-bands.svg': bandPicture(readied(materialOf('alkyd-enamel'), tools), 3), 'model-night.svg': nightPicture() })
   console.log(`runtime ${((performance.now() - began) / 1000).toFixed(0)} s`)
   return 0
 }

@@ -14,6 +14,12 @@ const earlyOf = (tallies: readonly Tally[]) => {
   return times === 0 ? '     - ' : `${percent(early / times)}${within(early / times, 0.07, 0.13)}`
 }
 
+/** Share of coats for which give-till came too early. */
+export function earlyShare(tallies: readonly Tally[]): number {
+  const { times, early } = sum(tallies)
+  return early / times
+}
+
 /** Bars of mean give-till over likely after 20 fully tested coats; the third world has none. */
 const ratioBars: Record<string, number> = { offset: 1.35, scatter: 1.65 }
 

@@ -117,6 +117,19 @@ describe('what a bench learns from its tests', () => {
   })
 })
 
+describe('a "not yet" on another coat', () => {
+  it('makes likely earlier by nothing one would see, and give-till by at most 3 % where it shows that the bench is even', () => {
+    // Under each division a "not yet" moves everything later; but one that agrees with the bench's own middle also speaks for an even bench, whose
+    // band is narrower. Worst of 3,000 seeded cases: 0.3 % and 2.0 %.
+    fc.assert(fc.property(tests, fc.double({ min: -1.5, max: 1.5, noNaN: true }), (given, log) => {
+      const before = learned(given)
+      const after = learned([...given, test(log, false, { extra: 0.01 })])
+      expect(q(after, 1, 1)).toBeGreaterThan(q(before, 1, 1) - 0.005)
+      expect(q(after, 1, 2)).toBeGreaterThan(q(before, 1, 2) - 0.03)
+    }), { numRuns: 300, seed: 5 })
+  })
+})
+
 describe('how tests age', () => {
   it('counts in full for 400 days and by half for every 180 more', () => {
     expect(fadeOf(0)).toBe(1)
