@@ -8,6 +8,7 @@ import { milestoneNames } from '#shared/terms'
 import { effectText, toldWords } from '#shared/words/hands'
 import type { Effect } from '#shared/words/hands'
 import { groupNames } from '#shared/words/group'
+import { groupMoment } from '#shared/verdict/next'
 import { momentText } from '#shared/words/moments'
 import { actText } from '#shared/words/steps'
 import type { ToldLine } from '~/stores/told'
@@ -59,7 +60,7 @@ function makeTelling(studio: Studio) {
   function describe(line: EffectOf & Pick<ToldLine, 'pieceIds' | 'before'>): { effect: string, now: Effect | null } {
     const effect = effectNow(line)
     if (effect) return { effect: effectText(effect, line.before, studio.clock.value), now: effect }
-    const next = studio.pieces.value.find(read => line.pieceIds.includes(read.piece.id))?.next
+    const next = groupMoment(studio.pieces.value.flatMap(read => (line.pieceIds.includes(read.piece.id) ? read.next ?? [] : [])))
     return { effect: next ? toldWords.next(momentText(next, studio.clock.value)) : '', now: null }
   }
 

@@ -3,9 +3,14 @@ import type { DayPeg } from '#shared/shelf'
 import { addDays, clockTime, fromLocal, localDate, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { aboutToShutMs } from '#shared/verdict/begin'
+import { groupMoment } from '#shared/verdict/next'
+import type { NextMoment, StartBy } from '#shared/verdict/next'
+import { startMoment, turnMoment } from '#shared/verdict/piece'
 import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
-import { boardWords, dayNote, dueSince, startByText } from '#shared/words/board'
+import { boardWords, dayNote, dueSince } from '#shared/words/board'
 import { groupNames } from '#shared/words/group'
+import { outTitle } from '#shared/words/hands'
+import { checkTimeText, startByText } from '#shared/words/moments'
 import { stepNoun } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 
@@ -38,19 +43,26 @@ function sessionPegs(state: StudioState, byTurn: ReadonlyMap<number, Member>, cl
     const first = members[0]
     if (!first || session.startsAt >= until) return []
     const { step } = first.turn.turn
-    const pressed = session.lastStartAt !== null && session.lastStartAt < until
-    return [{ key: `${step.kind} ${stepNoun(step.kind, step.name)} ${pressed ? session.id : ''}`, session, members, pressed }]
+    const start = startOf(members, clock.now)
+    const pressed = start !== null && start.at < until
+    return [{ key: `${step.kind} ${stepNoun(step.kind, step.name)} ${pressed ? session.id : ''}`, session, members, start: pressed ? start : null }]
   })
-  return [...alike(works)].map(([key, { session, members, pressed }]): DayPeg => {
+  return [...alike(works)].map(([key, { session, members, start }]): DayPeg => {
     const { step } = members[0]!.turn.turn
     return {
       key, at: Math.max(session.startsAt, clock.now), title: titled(stepNoun(step.kind, step.name), members.map(({ piece }) => piece.piece.name)),
-      ...pressed ? lastStart(session, members.length, clock) : plainly(session.startsAt, members, clock),
+      ...start ? { says: startByText(start, clock), urgent: start.at - clock.now <= aboutToShutMs } : plainly(session.startsAt, members, clock),
     }
   })
 }
 
-interface Work { key: string, session: SessionState, members: Member[], pressed: boolean }
+interface Work { key: string, session: SessionState, members: Member[], start: StartBy | null }
+
+/** The last moment to start that stands for a session, as its pieces say it. */
+function startOf(members: readonly Member[], now: number): StartBy | null {
+  const moment = groupMoment(members.flatMap(({ turn }) => startMoment(turn, now) ?? []))
+  return moment?.kind === 'start by' ? moment : null
+}
 
 /** Sessions of the day that do the same, under the first of them; one that a window presses stands alone. */
 function alike(works: readonly Work[]): Map<string, Work> {
@@ -64,26 +76,27 @@ function alike(works: readonly Work[]): Map<string, Work> {
 
 const titled = (what: string, names: readonly string[]) => `${asSentence(what).slice(0, -1)}, ${groupNames(names)}`
 
-function lastStart(session: SessionState, size: number, clock: Clock): { says: string, urgent: boolean } {
-  const at = session.lastStartAt ?? session.startsAt
-  return { says: startByText(at, size, clock), urgent: at - clock.now <= aboutToShutMs }
-}
+type Check = Extract<NextMoment, { kind: 'check' }>
+interface Checks { what: string, moments: Check[], names: string[], minutes: number }
 
-/** Checks inside rests and takings-out that no session holds, those alike in time and name together. */
+/** Checks inside rests and takings-out that no session holds, those alike in name together. */
 function checkPegs(pieces: readonly ReadPiece[], inSession: ReadonlySet<number>, clock: Clock, until: number): DayPeg[] {
-  const groups = new Map<string, { at: number, what: string, names: string[], minutes: number }>()
+  const groups = new Map<string, Checks>()
   for (const piece of pieces) {
-    for (const { turn } of piece.turns) {
-      if (turn.kind === 'work' || turn.wantedAt === null || turn.wantedAt >= until || inSession.has(turn.turnId)) continue
-      const what = turn.name || turn.step.name
-      const known = groups.get(what) ?? { at: turn.wantedAt, what, names: [], minutes: 0 }
-      groups.set(what, { at: Math.min(known.at, turn.wantedAt), what, names: [...known.names, piece.piece.name], minutes: known.minutes + turn.pieceMin })
+    for (const read of piece.turns) {
+      const moment = turnMoment(read, clock.now, null)
+      if (moment?.kind !== 'check' || moment.at >= until || inSession.has(read.turn.turnId)) continue
+      const what = moment.out === null ? moment.what : outTitle(moment.out)
+      const known = groups.get(what) ?? { what, moments: [], names: [], minutes: 0 }
+      groups.set(what, { what, moments: [...known.moments, moment], names: [...known.names, piece.piece.name], minutes: known.minutes + read.turn.pieceMin })
     }
   }
-  return [...groups].map(([key, { at, what, names, minutes }]) => ({
-    key: `check ${key}`, at: Math.max(at, clock.now), title: titled(what, names), urgent: false,
-    says: [at <= clock.now ? dueSince(at, clock) : clockTime(at, clock), ...minutes > 0 ? [span(minutes)] : []].join(', '),
-  }))
+  return [...groups].flatMap(([key, { what, moments, names, minutes }]): DayPeg[] => {
+    const moment = groupMoment(moments)
+    if (moment?.kind !== 'check') return []
+    const says = [moment.due ? dueSince(moment.at, clock) : checkTimeText(moment, clock), ...minutes > 0 ? [span(minutes)] : []].join(', ')
+    return [{ key: `check ${key}`, at: Math.max(moment.at, clock.now), title: titled(what, names), urgent: false, says }]
+  })
 }
 
 function ragPegs(state: StudioState, clock: Clock): DayPeg[] {

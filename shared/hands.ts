@@ -1,3 +1,4 @@
+import { groupMoment } from '#shared/verdict/next'
 import { turnMoment } from '#shared/verdict/piece'
 import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
 import type { BeginReason } from '#shared/verdict/begin'
@@ -35,6 +36,8 @@ export interface Job {
   pressing: boolean
   /** The planned start of a coat or glue-up has passed and nobody has said whether it went on. */
   due: boolean
+  /** The first planned start that passed so, ms UTC. */
+  dueAt: number | null
   tests: MilestoneName | null
   /** A film beneath is in doubt: tested or stripped before anything else. */
   doubtful: boolean
@@ -65,11 +68,16 @@ function clusters(pieces: readonly JobPiece[], now: number): JobPiece[][] {
   return found
 }
 
+/** Two sessions that windows press are two last moments: never one job, though the batch and the step are the same. */
+function pressedBy({ turn: { plan } }: ReadTurn): string {
+  return plan === null || plan.lastStartAt === null ? '' : `pressed ${plan.sessionId} ${plan.lastStartAt}`
+}
+
 function keyOf({ read, turn }: JobPiece, sharedSessions: ReadonlySet<string>): string {
   const { kind, step, no, plan } = turn.turn
   const session = `${plan?.sessionId} ${step.key}`
   const together = plan && plan.sessionId !== null && sharedSessions.has(session) ? `session ${session}` : `batch ${read.piece.batch.id} ${step.key}`
-  return [together, kind, no, phaseOf(turn)].join(' | ')
+  return [together, kind, no, phaseOf(turn), pressedBy(turn)].join(' | ')
 }
 
 /** Sessions in which one step key comes from several batches: only those join what the batches keep apart. */
@@ -101,13 +109,12 @@ function slowest(pieces: readonly JobPiece[]): ReadTurn | undefined {
   return pieces.map(each => each.turn).reduce<ReadTurn | undefined>((last, each) => (last === undefined || time(each) > time(last) ? each : last), undefined)
 }
 
-/** The most pressing moment among the pieces: the earliest last start, else the latest beginning, else the first check. */
+/** What presses before all: no beginning may stand where a window makes hands start by a time. */
 function momentOf(pieces: readonly JobPiece[], now: number, heardAt: number | null): NextMoment | null {
-  const moments = pieces.flatMap(each => turnMoment(each.turn, now, heardAt) ?? [])
-  const starts = moments.filter(each => each.kind === 'start by').sort((a, b) => a.at - b.at)
-  const rest = moments.filter(each => each.kind !== 'start by').sort((a, b) => (a.kind === 'check' ? a.at - b.at : b.at - a.at))
-  return starts[0] ?? rest[0] ?? null
+  return groupMoment(pieces.flatMap(each => turnMoment(each.turn, now, heardAt) ?? []))
 }
+
+const least = (times: readonly number[]) => (times.length === 0 ? null : Math.min(...times))
 
 function jobOf(id: string, pieces: JobPiece[], clock: Clock, heardAt: number | null): Job | null {
   const first = pieces[0]?.turn
@@ -117,13 +124,13 @@ function jobOf(id: string, pieces: JobPiece[], clock: Clock, heardAt: number | n
   const phase = phaseOf(first)
   const timed = phase === 'timed'
   const may = first.turn.kind === 'work' ? pieces.every(each => each.turn.begin.may) : first.turn.wantedAt !== null && first.turn.wantedAt <= now
-  const due = pieces.some(each => isDue(each.turn, now))
   const pressing = pieces.some(each => each.turn.late !== null)
   const starts = pieces.flatMap(each => planned(each.turn, now) ?? [])
+  const dueAt = least(pieces.flatMap(each => (isDue(each.turn, now) && each.turn.turn.plan ? [each.turn.turn.plan.dueAt] : [])))
   const at = !timed || starts.length === 0 ? null : Math.max(...starts)
-  const urgent = pressing || due || phase.startsWith('doing') || phase === 'doubt' || phase === 'window shut'
-  const moment = timed ? momentOf(pieces, now, heardAt) : null
-  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due, doubtful: phase === 'doubt', tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
+  const urgent = pressing || dueAt !== null || phase.startsWith('doing') || phase === 'doubt' || phase === 'window shut'
+  const moment = phase.startsWith('aside') || phase.startsWith('doing') ? null : momentOf(pieces, now, heardAt)
+  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due: dueAt !== null, dueAt, doubtful: phase === 'doubt', tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
 }
 
 /** When hands are wanted for one turn: once it may begin, and not before the plan wants it. */
@@ -166,7 +173,7 @@ export function handsJobs(pieces: readonly ReadPiece[], clock: Clock, heardAt: n
     if (known) known.push(each)
     else groups.set(key, [each])
   }
-  const jobs = [...groups.values()].flatMap(group => clusters(group, clock.now)).flatMap((group) => {
+  const jobs = [...groups.values()].flatMap(group => (group[0] && pressedBy(group[0].turn) !== '' ? [group] : clusters(group, clock.now))).flatMap((group) => {
     const inRow = [...group].sort((a, b) => a.read.piece.id - b.read.piece.id)
     const [head] = inRow
     return head ? jobOf(`${head.turn.turn.turnId}`, inRow, clock, heardAt) ?? [] : []

@@ -1,6 +1,13 @@
 import { grouped } from '#shared/grouped'
 import { clockTime, localDate, roughTime } from '#shared/time'
+import type { Clock } from '#shared/time'
+import { groupMoment } from '#shared/verdict/next'
+import type { NextMoment, StartBy } from '#shared/verdict/next'
+import { beginMoment, startMoment } from '#shared/verdict/piece'
 import { callWords } from '#shared/words/calls'
+import { momentText } from '#shared/words/moments'
+import { lowerFirst } from '#shared/words/steps'
+import { asSentence } from '#shared/words/verdict'
 import { lastOpenMoment, nightAfter } from './hours'
 import { workKey } from './state'
 import type { CallState, PlannedTurn } from './state'
@@ -15,62 +22,68 @@ export const ragsAgainMs = 15 * minute
 const leaveLeadMs = 30 * minute
 const leaveUntilMs = 90 * minute
 
-/** How the calls of one studio say a time: `by` is never later than it is, `from` never earlier, `clock` to the minute. */
-function timeWords({ hours: { zone } }: CallState, now: number) {
-  const clock = { now, zone }
-  return {
-    by: (at: number) => roughTime(at, clock, 'down'),
-    from: (at: number) => roughTime(at, clock, 'up'),
-    clock: (at: number) => clockTime(at, clock),
-  }
-}
+const clockOf = ({ hours: { zone } }: CallState, now: number): Clock => ({ now, zone })
 
-/** Pieces of one batch that come to the same step in the same session: one call for all of them. */
+/** Pieces of one batch that come to the same step together: one call for all of them. */
 interface Group { key: string, first: PlannedTurn, turns: PlannedTurn[], failedTests: number }
 
-/** The group key survives a new plan: it names the step, the turn, the branch and the act of the oldest film under it. */
-function groupTurns(turns: readonly PlannedTurn[]): Group[] {
-  const groups = grouped(turns, turn => JSON.stringify([turn.batchId, turn.branchId, turn.stepKey, turn.ordinal, turn.sessionId]))
+/**
+ * Groups turns of one step by what else tells them apart. The key names the call's cause, so it has to survive a new
+ * plan: the step, the turn, the branch, and what `sign` says of the group.
+ */
+function groupTurns(turns: readonly PlannedTurn[], apart: (turn: PlannedTurn) => number | null, sign: (group: readonly PlannedTurn[]) => number[]): Group[] {
+  const groups = grouped(turns, turn => JSON.stringify([turn.batchId, turn.branchId, turn.stepKey, turn.ordinal, apart(turn)]))
   return [...groups.values()].flatMap((members) => {
     const [first] = members
     if (!first) return []
-    const acts = members.flatMap(turn => turn.after ? [turn.after.actId] : [])
-    const key = JSON.stringify([first.stepKey, first.ordinal, first.branchId ?? 0, acts.length ? Math.min(...acts) : 0])
+    const key = JSON.stringify([first.stepKey, first.ordinal, first.branchId ?? 0, ...sign(members)])
     return [{ key, first, turns: members, failedTests: Math.max(0, ...members.map(turn => turn.after?.failedTests ?? 0)) }]
   })
 }
 
-const least = (values: (number | null)[]) => {
-  const known = values.filter(value => value !== null)
-  return known.length ? Math.min(...known) : null
-}
+const oldestAct = (turns: readonly PlannedTurn[]) => Math.min(...turns.flatMap(turn => turn.after?.actId ?? []), Infinity)
 
-const workOf = ({ first, turns }: Group) => ({ step: first.turnName || first.stepName, batch: first.batchName, count: new Set(turns.map(turn => turn.pieceName)).size })
+/** By session, for each has its own last moment; known by its first turn, so that the second is not taken for the first again. */
+const bySession = (turns: readonly PlannedTurn[]) => groupTurns(turns, turn => turn.sessionId, group => [Number.isFinite(oldestAct(group)) ? oldestAct(group) : 0, Math.min(...group.map(turn => turn.turnId))])
+
+/** By the act of the film beneath: what went on together is ready together, in however many sessions hands come to it. */
+const byFilm = (turns: readonly PlannedTurn[]) => groupTurns(turns, turn => turn.after?.actId ?? null, group => [oldestAct(group)])
+
+const workOf = ({ first, turns }: Group) => ({ batch: first.batchName, count: new Set(turns.map(turn => turn.pieceName)).size })
 
 const callFor = (group: Group) => ({
   subjectType: 'batch' as const, subjectId: group.first.batchId, groupKey: group.key, repeat: group.failedTests,
   path: `/hands?turn=${group.first.turnId}${group.first.stepKind === 'coat' && group.first.kind === 'work' ? '&act=coat' : ''}`,
 })
 
+/** The last moment to start that stands for a group, as its pieces say it; null when none does, or all are past. */
+function startOf(group: Group, now: number): StartBy | null {
+  const moment = groupMoment(group.turns.flatMap(({ read }) => startMoment(read, now) ?? []))
+  return moment?.kind === 'start by' && moment.at >= now ? moment : null
+}
+
 /** The last moment to start them all, and then the last moment for as many as could still be done. */
 export function lastMoments(state: CallState, now: number): WantedReminder[] {
-  const { by } = timeWords(state, now)
-  return groupTurns(state.turns.filter(turn => turn.lastStartAt !== null && !state.underWay.has(workKey(turn)))).flatMap((group): WantedReminder[] => {
-    const allAt = least(group.turns.map(turn => turn.lastStartAt))
-    if (allAt === null) return []
-    const fewAt = least(group.turns.map(turn => turn.lastStartFewAt))
-    const count = least(group.turns.map(turn => turn.firstFew))
-    const few = fewAt !== null && count !== null && fewAt > allAt ? { count, by: by(fewAt) } : null
-    const call = { ...callFor(group), kind: 'last moment to start' as const }
+  const clock = clockOf(state, now)
+  const words = callWords.lastMoment
+  return bySession(state.turns.filter(turn => !state.underWay.has(workKey(turn)))).flatMap((group): WantedReminder[] => {
+    const start = startOf(group, now)
+    if (!start) return []
+    const call = { ...callFor(group), kind: 'last moment to start' as const, title: words.title(roughTime(start.at, clock, 'down')) }
     const work = workOf(group)
-    if (now < allAt) {
-      return [{ ...call, stage: 'all', dueAt: leadBefore(state, allAt), title: callWords.lastMoment.title(by(allAt)), body: callWords.lastMoment.all(work, by(allAt), few) }]
+    const says = momentText(start, clock)
+    if (start.pieces !== null && start.pieces.some < start.pieces.all) {
+      const allAt = Math.min(...group.turns.flatMap(({ read }) => read.turn.plan?.lastStartAt ?? []))
+      return [{ ...call, stage: 'first few', dueAt: Math.max(allAt, start.at - leadMs), body: words.few(work, start.pieces.all, says) }]
     }
-    if (few && fewAt !== null && now < fewAt) {
-      return [{ ...call, stage: 'first few', dueAt: Math.max(allAt, fewAt - leadMs), title: callWords.lastMoment.title(few.by), body: callWords.lastMoment.few(work, few) }]
-    }
-    return []
+    return [{ ...call, stage: 'all', dueAt: leadBefore(state, start.at), body: words.all(work, says, fewOf(group, start, clock)) }]
   })
+}
+
+/** "by 14:35 for the first 4", where as many could still be done after the last moment for all. */
+function fewOf({ turns }: Group, start: StartBy, clock: Clock): string | null {
+  const plan = turns.map(({ read }) => read.turn.plan).find(each => each && each.lastStartFewAt !== null && each.lastStartFewAt > start.at)
+  return plan && plan.firstFew !== null && plan.lastStartFewAt !== null ? callWords.lastMoment.firstFew(plan.firstFew, roughTime(plan.lastStartFewAt, clock, 'down')) : null
 }
 
 /** Half an hour before; for a moment in the night, half an hour before the studio shuts. */
@@ -78,16 +91,34 @@ function leadBefore(state: CallState, at: number) {
   return Math.min(at, lastOpenMoment(state.hours, at)) - leadMs
 }
 
-/** The next attended turn over a film, when the plan has hands for it. */
+/** What waits for a film is ready by a time; what waits for hands alone needs no call. */
+function waitsForFilm({ read: { turn } }: PlannedTurn): boolean {
+  return turn.kind !== 'work' || turn.waits.some(each => each.films.length > 0)
+}
+
+/** From when a group may be gone on with, the slowest piece speaking; null while nobody can say, or something else comes first. */
+function readyFrom(group: Group, now: number): NextMoment | null {
+  const moments = group.turns.map(({ read }) => beginMoment(read, now))
+  return moments.some(each => each === null) ? null : groupMoment(moments.flatMap(each => each ?? []))
+}
+
+/** The next attended turn over a film, when the plan has hands for it, in the words that its pieces have for it. */
 export function readies(state: CallState, now: number): WantedReminder[] {
-  const { from } = timeWords(state, now)
-  return groupTurns(state.turns.filter(turn => turn.after !== null && !state.underWay.has(workKey(turn)))).map((group) => {
-    const dueAt = Math.min(...group.turns.map(turn => turn.dueAt))
+  const clock = clockOf(state, now)
+  const open = state.turns.filter(turn => turn.after !== null && waitsForFilm(turn) && !state.underWay.has(workKey(turn)))
+  return byFilm(open).flatMap((group): WantedReminder[] => {
+    const planned = Math.min(...group.turns.map(turn => turn.dueAt))
     const work = workOf(group)
-    const body = group.turns.some(turn => turn.afterTest) ? callWords.ready.afterTest(work) : callWords.ready.body(work)
-    return { ...callFor(group), kind: 'ready' as const, stage: 'ready', dueAt, title: callWords.ready.title(work.step, from(dueAt)), body }
+    const call = { ...callFor(group), kind: 'ready' as const, stage: 'ready' }
+    const from = readyFrom(group, now)
+    if (from) return [{ ...call, dueAt: Math.max(planned, from.at), title: asTitle(momentText(from, clock)), body: group.first.kind === 'release' ? callWords.ready.held(work) : callWords.ready.body(work) }]
+    const untold = group.turns.every(({ read }) => testedFirst.includes(read.begin.because.code))
+    return untold ? [{ ...call, dueAt: planned, title: callWords.ready.testTitle(lowerFirst(group.first.stepName)), body: callWords.ready.afterTest(work) }] : []
   })
 }
+
+const testedFirst = ['no promise', 'unknown film', 'doubt']
+const asTitle = (words: string) => asSentence(words).slice(0, -1)
 
 /** What to see to before the studio shuts tonight, in one call; none when there is nothing. */
 export function leaving(state: CallState, now: number): WantedReminder[] {
@@ -97,18 +128,21 @@ export function leaving(state: CallState, now: number): WantedReminder[] {
   if (lines.length === 0) return []
   return [{
     kind: 'before you leave', subjectType: 'studio', subjectId: state.studioId, groupKey: localDate(now, state.hours.zone), stage: 'evening', repeat: 0,
-    dueAt: night.fromAt - leaveLeadMs, title: callWords.leaving.title(timeWords(state, now).clock(night.fromAt)), body: lines.join('\n'), path: '/hands?list=leaving',
+    dueAt: night.fromAt - leaveLeadMs, title: callWords.leaving.title(clockTime(night.fromAt, clockOf(state, now))), body: lines.join('\n'), path: '/hands?list=leaving',
   }]
 }
 
 function leavingLines(state: CallState, night: { fromAt: number, toAt: number | null }, now: number): string[] {
   const words = callWords.leaving
-  const { by } = timeWords(state, now)
-  const shutting = groupTurns(state.turns.filter(turn => turn.lastStartAt !== null && turn.lastStartAt >= night.fromAt && turn.lastStartAt < (night.toAt ?? Infinity)))
+  const clock = clockOf(state, now)
+  const shutting = bySession(state.turns).flatMap((group) => {
+    const start = startOf(group, now)
+    return start && start.at >= night.fromAt && start.at < (night.toAt ?? Infinity) ? [{ ...workOf(group), says: momentText(start, clock) }] : []
+  })
   const isPotUsed = state.usedToday.some(used => used.kind === 'glue size' || used.libraryKey === 'hot-hide-glue')
   return [
     ...state.rags.length ? [words.rags(state.rags.map(duty => duty.roomName))] : [],
-    ...shutting.map(({ first, turns }) => words.shuts(first.turnName || first.stepName, first.batchName, by(least(turns.map(turn => turn.lastStartAt)) ?? night.fromAt))),
+    ...shutting.map(({ batch, says }) => words.shuts(batch, says)),
     ...state.outdoors.length ? [words.outdoors(state.outdoors.map(piece => piece.pieceName))] : [],
     ...state.wetRooms.filter(room => room.solvent > 0).map(room => words.solvent(room.name)),
     // Never beside a solvent film: warmth there is no lever.
@@ -123,10 +157,10 @@ function leavingLines(state: CallState, night: { fromAt: number, toAt: number | 
  * somebody answers. After a time without the server only the newest question is asked, not each that was missed.
  */
 export function ragCalls(state: CallState, now: number): WantedReminder[] {
-  const { clock } = timeWords(state, now)
+  const clock = clockOf(state, now)
   return state.rags.flatMap((duty): WantedReminder[] => {
     const call = { kind: 'rags' as const, subjectType: 'rag duty' as const, subjectId: duty.dutyId, groupKey: `oil ${duty.lastOilActId}`, path: `/hands?rags=${duty.dutyId}`, title: callWords.rags.title }
-    const words = (repeat: number) => (repeat === 0 ? callWords.rags.body : callWords.rags.again)(duty.roomName, clock(duty.lastOilAt))
+    const words = (repeat: number) => (repeat === 0 ? callWords.rags.body : callWords.rags.again)(duty.roomName, clockTime(duty.lastOilAt, clock))
     const firstAt = duty.lastOilAt + ragsFirstMs
     const asked = Math.max(0, Math.floor((now - firstAt) / ragsAgainMs))
     const repeats = now < firstAt ? [0] : [asked, asked + 1]

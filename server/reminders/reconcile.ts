@@ -53,8 +53,9 @@ function keep(tx: Transaction, row: ReminderRow, call: WantedReminder, done: Rec
     done.revived += 1
     return
   }
-  if (row.status !== 'due') return
-  const words = wordsOf(call)
+  if (!isOpen(row)) return
+  // What was called already keeps its time; where it is still shown, or sent again, it says what is true now.
+  const words = row.status === 'due' ? wordsOf(call) : { ...wordsOf(call), dueAt: row.dueAt }
   if (row.dueAt === words.dueAt && row.title === words.title && row.body === words.body && row.path === words.path) return
   tx.update(reminder).set(words).where(eq(reminder.id, row.id)).run()
   if (row.dueAt !== words.dueAt) done.moved += 1

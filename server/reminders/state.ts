@@ -1,10 +1,14 @@
 import { and, eq, isNull, sql } from 'drizzle-orm'
 import { closure, openHours, ragDuty, room, studio } from '~~/db/schema'
+import { pieceStates } from '~~/server/services/piece-states'
+import { placeStates, roomStates } from '~~/server/services/room-states'
 import type { Database } from '~~/server/utils/database'
 import { grouped } from '#shared/grouped'
 import type { StepKind, TurnKind } from '#shared/terms'
 import { startOfLocalDay, studioZone } from '#shared/time'
 import type { StudioZone } from '#shared/time'
+import { readPiece } from '#shared/verdict/piece'
+import type { ReadTurn } from '#shared/verdict/piece'
 import type { StudioHours } from './hours'
 import { readShutRooms, readStarts } from './vapour'
 import type { ShutRoomCall, VapourStartCall } from './vapour'
@@ -26,10 +30,9 @@ export interface PlannedTurn {
   pieceName: string
   /** The first planned start that nobody has spoken to: a new plan does not push a silent start on. */
   dueAt: number
-  lastStartAt: number | null
-  firstFew: number | null
-  lastStartFewAt: number | null
   afterTest: boolean
+  /** As every screen reads it. */
+  read: ReadTurn
   /** The act of the newest film under this turn's hands, and how often that film was still not there when touched. */
   after: { actId: number, failedTests: number } | null
 }
@@ -85,22 +88,33 @@ function readHours(db: Database, studioId: number, zone: StudioZone): StudioHour
   return { zone, open: db.select().from(openHours).where(own(openHours)).all(), closed: db.select().from(closure).where(own(closure)).all() }
 }
 
-type TurnRow = Omit<PlannedTurn, 'after' | 'afterTest'> & { afterTest: number }
+type TurnRow = Omit<PlannedTurn, 'after' | 'afterTest' | 'read'> & { afterTest: number }
 
 function readTurns(db: Database, studioId: number, now: number): PlannedTurn[] {
   const until = now + horizonMs
   const rows = db.all<TurnRow>(sql`
     select e.turn_id as turnId, e.session_id as sessionId, p.batch_id as batchId, b.name as batchName, p.branch_id as branchId,
       s.id as stepId, s.key as stepKey, s.name as stepName, s.kind as stepKind, t.ordinal, t.kind, t.name as turnName, p.name as pieceName,
-      e.due_at as dueAt, e.last_start_at as lastStartAt, e.first_few as firstFew, e.last_start_few_at as lastStartFewAt, e.after_test as afterTest
+      e.due_at as dueAt, e.after_test as afterTest
     from plan pl join plan_entry e on e.plan_id = pl.id join turn t on t.id = e.turn_id join piece_step s on s.id = t.step_id
       join piece p on p.id = s.piece_id join batch b on b.id = p.batch_id
     where pl.studio_id = ${studioId} and pl.current = 1 and (e.due_at <= ${until} or e.last_start_at <= ${until})
       and t.status = 'waiting' and s.status in ('waiting', 'doing', 'resting') and p.gone_at is null and b.closed_at is null
     order by e.due_at, p.ordinal, t.id`)
+  if (rows.length === 0) return []
   const films = readFilms(db, studioId)
-  const parts = rows.length === 0 ? null : readParts(db, studioId)
-  return rows.map(row => ({ ...row, afterTest: Boolean(row.afterTest), after: newest((parts?.get(row.stepId) ?? []).map(({ partId }) => films.get(partId))) }))
+  const parts = readParts(db, studioId)
+  const reads = readAsScreensDo(db, studioId, now)
+  return rows.flatMap((row): PlannedTurn[] => {
+    const read = reads.get(row.turnId)
+    return read ? [{ ...row, read, afterTest: Boolean(row.afterTest), after: newest((parts.get(row.stepId) ?? []).map(({ partId }) => films.get(partId))) }] : []
+  })
+}
+
+/** The turns that are next on their pieces, by number: of what comes only after them no call can say a true time. */
+function readAsScreensDo(db: Database, studioId: number, now: number): Map<number, ReadTurn> {
+  const where = { rooms: roomStates(db, studioId, now), places: placeStates(db, studioId) }
+  return new Map(pieceStates(db, studioId, null).flatMap(piece => readPiece(piece, where, now, null).turns.map(read => [read.turn.turnId, read] as const)))
 }
 
 interface Film { coatId: number, actId: number, failedTests: number }

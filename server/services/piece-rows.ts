@@ -125,7 +125,7 @@ function readSteps(db: Reader, studioId: number, only: readonly number[] | null)
     links: read(db, linkColumns, sql`${from} join step_link link on link.to_step_id = step.id join piece_step earlier on earlier.id = link.from_step_id where ${front}`),
     targets: read(db, targetColumns, sql`${from} join step_target target on target.step_id = step.id where ${front} group by target.step_id, target.part_id`),
     entries: read(db, entryColumns, sql`${planned} and entry.turn_id in (select value from json_each(${JSON.stringify(turns.map(each => each.id))}))`),
-    sizes: read<{ sessionId: number | null, size: number }>(db, { sessionId: 'entry.session_id', size: 'count(*)' }, sql`${planned} group by entry.session_id`),
+    sizes: read<{ sessionId: number | null, size: number }>(db, { sessionId: 'entry.session_id', size: 'count(entry.last_start_at)' }, sql`${planned} and entry.session_id is not null group by entry.session_id`),
   }
 }
 

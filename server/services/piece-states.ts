@@ -152,9 +152,14 @@ function turnState({ row: step, material, turn, all, waits, film, entry, size, p
   }
 }
 
+function outAt({ milestones }: FilmState): number | null {
+  const rung = milestones.find(each => each.name === 'out-of-clamps')
+  return rung ? rung.reachedAt ?? rung.p90At : null
+}
+
 function wantedAt(turn: TurnRow, film: FilmState | null): number | null {
   if (!film) return null
   if (turn.kind === 'check' && turn.checkAfterMin !== null) return film.endedAt + turn.checkAfterMin * 60_000
-  if (turn.kind === 'release') return film.milestones.find(each => each.name === 'out-of-clamps')?.p90At ?? null
+  if (turn.kind === 'release') return outAt(film)
   return null
 }

@@ -61,7 +61,7 @@ export interface PlannedState {
   dueAt: number
   memberId: number | null
   sessionId: number | null
-  /** How many turns the session holds. */
+  /** For how many turns of the session its last moment to start is counted back. */
   sessionSize: number
   lastStartAt: number | null
   firstFew: number | null

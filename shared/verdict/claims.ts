@@ -43,7 +43,8 @@ function wetClaim(film: Film, at: number, grip: string | null): Claim[] {
 function filmClaims(film: Film, at: number, grip: string | null): Claim[] {
   const claims = [...doubtClaim(film, at), ...wetClaim(film, at, grip)]
   if (film.hold) {
-    const giveTillAt = film.handle && timeOf(film.handle)
+    // Time lifts nothing here: it is only said, and as the taking out is: at 90 %.
+    const giveTillAt = film.handle && (film.handle.reachedAt ?? film.handle.p90At)
     claims.push({ kind: 'hands off', line: 3, reason: { code: 'held', hold: film.hold, giveTillAt }, weight: lasting(giveTillAt) })
   }
   if (isUnknown(film)) claims.push({ kind: 'hands off', line: 4, reason: { code: 'unknown film' }, weight: 0 })

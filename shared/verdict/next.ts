@@ -1,5 +1,5 @@
 import { liftingTime } from '#shared/verdict/verdict'
-import type { StepKind } from '#shared/terms'
+import type { Hold, StepKind } from '#shared/terms'
 import type { Verdict, VerdictKind } from '#shared/verdict/types'
 
 /** The last moment to start a step, ms UTC, counted back from a window's early end at `shutsAt`. `pieces`: how many of how many can then still be done. */
@@ -8,8 +8,8 @@ export interface LastStart { stepId: number, stepKind: StepKind, at: number, wha
 /** When a waiting step may begin (`MayBegin.from`), ms UTC. `what` is the step's name. */
 export interface Beginning { stepId: number, stepKind: StepKind, at: number, what: string }
 
-/** An attended check inside a rest, or the taking out of clamps, ms UTC. `what` says what to do: "change the blotters". */
-export interface DueCheck { at: number, what: string }
+/** An attended check inside a rest, or the taking out of what holds it (`out`), ms UTC. `what` says what to do: "change the blotters". */
+export interface DueCheck { at: number, what: string, out: Hold | null }
 
 /** Everything the next moment of a piece is chosen from. */
 export interface NextFacts {
@@ -24,7 +24,10 @@ export type NextMoment =
   | { kind: 'start by', at: number, what: string, stepKind: StepKind, shutsAt: number | null, pieces: { some: number, all: number } | null }
   | { kind: 'may begin', at: number, what: string, stepKind: StepKind, open: boolean }
   | { kind: 'better', at: number, what: VerdictKind, grip: string | null }
-  | { kind: 'check', at: number, what: string, due: boolean }
+  | { kind: 'check', at: number, what: string, out: Hold | null, due: boolean }
+
+/** The last moment to start something, as a next moment. */
+export type StartBy = Extract<NextMoment, { kind: 'start by' }>
 
 /** Of one step's last moments the first that can still be kept; when all are past, the last of them. */
 function standing(starts: readonly LastStart[], now: number): LastStart[] {
@@ -54,8 +57,18 @@ export function nextMoment(facts: NextFacts, now: number, heardAt: number | null
     ...facts.mayBegins.filter(({ stepId, at }) => at > now || !pressed.has(stepId))
       .map(({ at, what, stepKind }) => ({ kind: 'may begin' as const, at, what, stepKind, open: at <= lifting })),
     ...betterAt !== null && betterKind ? [{ kind: 'better' as const, at: betterAt, what: betterKind, grip: betterGrip }] : [],
-    ...facts.checks.map(({ at, what }) => ({ kind: 'check' as const, at, what, due: at <= now })),
+    ...facts.checks.map(({ at, what, out }) => ({ kind: 'check' as const, at, what, out, due: at <= (out === null ? now : lifting) })),
   ]
   const first = (a: NextMoment, b: NextMoment) => Math.max(b.at, now) < Math.max(a.at, now) ? b : a
   return moments.length === 0 ? null : moments.reduce(first)
+}
+
+/**
+ * One moment for a line about several pieces: of last moments to start the earliest, of checks too; of what time has to
+ * bring about, the latest, for the slowest piece speaks for all. Null for none.
+ */
+export function groupMoment(moments: readonly NextMoment[]): NextMoment | null {
+  const press = (moment: NextMoment) => (moment.kind === 'start by' ? 0 : moment.kind === 'check' && moment.out === null ? 1 : 2)
+  const before = (a: NextMoment, b: NextMoment) => press(a) - press(b) || (press(a) === 2 ? b.at - a.at : a.at - b.at)
+  return [...moments].sort(before)[0] ?? null
 }

@@ -3,7 +3,7 @@ import type { MayBegin, StepState, Who } from '#shared/verdict/begin'
 import { groupFacts } from '#shared/verdict/facts'
 import type { Whereabouts } from '#shared/verdict/facts'
 import { nextMoment } from '#shared/verdict/next'
-import type { Beginning, DueCheck, LastStart, NextMoment } from '#shared/verdict/next'
+import type { Beginning, DueCheck, LastStart, NextMoment, StartBy } from '#shared/verdict/next'
 import { groupVerdict, pieceVerdict } from '#shared/verdict/verdict'
 import type { Verdict } from '#shared/verdict/types'
 import type { GroupState, PieceState, TurnState } from '#shared/schemas/piece-state'
@@ -17,6 +17,7 @@ export interface ReadGroup { group: GroupState, verdict: Verdict }
 /** All that any screen, feed or message says of a piece. */
 export interface ReadPiece { piece: PieceState, verdict: Verdict, groups: ReadGroup[], turns: ReadTurn[], next: NextMoment | null }
 
+const noVerdict = { betterAt: null, betterKind: null, betterGrip: null }
 const nowhere: Verdict = pieceVerdict([], 0, null)
 
 /**
@@ -58,14 +59,30 @@ function goesOn({ step }: TurnState, operatorId: number | null, who: Who): boole
 
 /** The next moment of one turn alone, for a list of work: chosen as a piece's own is, without its verdict. */
 export function turnMoment(turn: ReadTurn, now: number, heardAt: number | null): NextMoment | null {
-  const facts = { verdict: { betterAt: null, betterKind: null, betterGrip: null }, lastStarts: lastStarts([turn]), mayBegins: beginnings([turn], now), checks: checks([turn]) }
+  const facts = { verdict: noVerdict, lastStarts: lastStarts([turn]), mayBegins: beginnings([turn], now), checks: checks([turn]) }
   return nextMoment(facts, now, heardAt)
 }
+
+/** The last moment to start one turn that stands now, or the last of them that has passed; null when nothing presses. */
+export function startMoment(turn: ReadTurn, now: number): StartBy | null {
+  const facts = { verdict: noVerdict, lastStarts: lastStarts([turn]), mayBegins: [], checks: [] }
+  const moment = nextMoment(facts, now, null)
+  return moment?.kind === 'start by' ? moment : null
+}
+
+/** From when one turn may be gone on with, whatever presses it; null while nobody can say. ms as for `readPiece`. */
+export function beginMoment(turn: ReadTurn, now: number): NextMoment | null {
+  const facts = { verdict: noVerdict, lastStarts: [], mayBegins: beginnings([turn], now), checks: checks([turn]) }
+  return nextMoment(facts, now, null)
+}
+
+/** No time is to read as leave where a room is shut, or before a doubt has been tested. */
+const barred = ['keep out', 'doubt']
 
 function lastStarts(turns: readonly ReadTurn[]): LastStart[] {
   return turns.flatMap(({ turn, begin }): LastStart[] => {
     const { plan } = turn
-    if (turn.kind !== 'work' || turn.status !== 'waiting' || !plan || plan.lastStartAt === null) return []
+    if (turn.kind !== 'work' || turn.status !== 'waiting' || turn.step.status === 'set aside' || !plan || plan.lastStartAt === null || barred.includes(begin.because.code)) return []
     const common = { stepId: turn.step.id, stepKind: turn.step.kind, what: turn.step.name, shutsAt: begin.till }
     const few = plan.lastStartFewAt === null || plan.firstFew === null ? [] : [{ ...common, at: plan.lastStartFewAt, pieces: { some: plan.firstFew, all: plan.sessionSize } }]
     return [{ ...common, at: plan.lastStartAt, pieces: plan.sessionSize > 1 ? { some: plan.sessionSize, all: plan.sessionSize } : null }, ...few]
@@ -81,5 +98,5 @@ function beginnings(turns: readonly ReadTurn[], now: number): Beginning[] {
 }
 
 function checks(turns: readonly ReadTurn[]): DueCheck[] {
-  return turns.flatMap(({ turn }) => (turn.kind === 'work' || turn.wantedAt === null ? [] : [{ at: turn.wantedAt, what: turn.name || turn.step.name }]))
+  return turns.flatMap(({ turn }) => (turn.kind === 'work' || turn.wantedAt === null ? [] : [{ at: turn.wantedAt, what: turn.name || turn.step.name, out: turn.kind === 'release' ? turn.step.hold ?? 'clamps' : null }]))
 }

@@ -1,4 +1,4 @@
-import { ago, clockTime, roughTime, span } from '#shared/time'
+import { ago, clockTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
 import type { Verdict } from '#shared/verdict/types'
@@ -111,12 +111,6 @@ export function dayNote(closesAt: number | null, minutes: number, clock: Clock):
 }
 
 export const dueSince = (at: number, clock: Clock) => `due since ${clockTime(at, clock)}`
-
-/** "start by 14:35 to do both", on a peg whose title says what. */
-export function startByText(at: number, size: number, clock: Clock): string {
-  const all = size === 1 ? '' : size === 2 ? ' to do both' : ` to do all ${size}`
-  return at < clock.now ? `late: was to start by ${clockTime(at, clock)}${all}` : `start by ${roughTime(at, clock, 'down')}${all}`
-}
 
 /** The sheet that a press on a piece opens. */
 export const pieceSheetWords = {

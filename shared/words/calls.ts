@@ -1,3 +1,5 @@
+import { asSentence } from '#shared/words/verdict'
+
 /** Every sentence of the calls: what a notification and a mail say. Times arrive as words. */
 
 const pieces = (count: number) => count === 1 ? 'one piece' : `${count} pieces`
@@ -8,27 +10,26 @@ export function someOf(names: readonly string[]): string {
   return names.length > 3 ? `${shown} and ${names.length - 3} more` : shown
 }
 
-interface Work { step: string, batch: string, count: number }
+interface Work { batch: string, count: number }
 
-const what = ({ step, batch, count }: Work) => `${step}: ${batch}, ${pieces(count)}.`
+const what = ({ batch, count }: Work) => `${batch}, ${pieces(count)}.`
 
 export const callWords = {
   lastMoment: {
     title: (by: string) => `Start by ${by}`,
-    all: (work: Work, by: string, few: { count: number, by: string } | null) => {
-      const rest = few ? `, by ${few.by} for the first ${few.count}` : ''
-      return work.count === 1 ? `${what(work)} Start by ${by}.` : `${what(work)} Start by ${by} to do all ${work.count}${rest}.`
-    },
-    few: (work: Work, few: { count: number, by: string }) => `${what(work)} There is no longer time for all ${work.count}. Start by ${few.by} for the first ${few.count}.`,
+    firstFew: (count: number, by: string) => `by ${by} for the first ${count}`,
+    all: (work: Work, says: string, few: string | null) => `${what(work)} ${asSentence(few ? `${says}, ${few}` : says)}`,
+    few: (work: Work, all: number, says: string) => `${what(work)} There is no longer time for all ${all}. ${asSentence(says)}`,
   },
   ready: {
-    title: (step: string, from: string) => `${step} from ${from}`,
-    body: (work: Work) => `${work.batch}, ${pieces(work.count)}. Still tacky? Tell us, the time moves.`,
-    afterTest: (work: Work) => `${work.batch}, ${pieces(work.count)}. Touch it first and tell us: the time rests on your test.`,
+    body: (work: Work) => `${what(work)} Still tacky? Tell us, the time moves.`,
+    held: (work: Work) => `${what(work)} Not holding yet? Leave it in and tell us, the time moves.`,
+    testTitle: (step: string) => `Touch it first: ${step}`,
+    afterTest: (work: Work) => `${what(work)} Touch it first and tell us: the time rests on your test.`,
   },
   leaving: {
     title: (at: string) => `Before you leave at ${at}`,
-    shuts: (step: string, batch: string, by: string) => `Shuts overnight: ${step}, ${batch}. Start by ${by}.`,
+    shuts: (batch: string, says: string) => `Shuts overnight: ${batch}. ${asSentence(says)}`,
     outdoors: (names: readonly string[]) => `Still outdoors: ${someOf(names)}. Look on the board how to hold them before you bring them in.`,
     heater: (room: string, films: number) => `${room}: ${films === 1 ? 'a film is' : `${films} films are`} still drying. The times count on the heating tonight.`,
     solvent: (room: string) => `${room}: a solvent film is drying. No flame, pilot light or heater in there.`,

@@ -4,6 +4,7 @@ import { clockTime, roughTime, span } from '#shared/time'
 import type { FilmState } from '#shared/schemas/piece-state'
 import type { Hold, MilestoneName } from '#shared/terms'
 import type { ReasonCode } from '#shared/drying/types'
+import type { StartBy } from '#shared/verdict/next'
 import { groupNames, listText } from '#shared/words/group'
 import { beginReason, momentReason, momentText } from '#shared/words/moments'
 import { lowerFirst, milestoneText } from '#shared/words/steps'
@@ -49,10 +50,13 @@ export const sectionEmpty = (section: Section) => nothing[section]
 
 const outTitles: Record<Hold, string> = { clamps: 'Out of clamps', press: 'Out of the press', weight: 'Out from under the weight' }
 
+/** What holds pieces, as the taking out of it is called: "Out of clamps". */
+export const outTitle = (hold: Hold) => outTitles[hold]
+
 /** "Second varnish", "Shellac, coat 3 of 8", "Out of clamps", "Change the blotters". */
 export function jobTitle({ kind, turn }: Pick<Job, 'kind' | 'turn'>): string {
   const name = turn.step.name || 'Something outside the schedule'
-  if (kind === 'release') return outTitles[turn.step.hold ?? 'clamps']
+  if (kind === 'release') return outTitle(turn.step.hold ?? 'clamps')
   if (kind === 'check') return turn.name || name
   if (turn.step.untilEnough) return `${name}, coat ${turn.no}`
   return turn.of > 1 ? `${name}, coat ${turn.no} of ${turn.of}` : name
@@ -73,7 +77,8 @@ export function timesText({ likelyAt, p90At, reason, reachedAt }: { likelyAt: nu
   if (reachedAt !== null) return `tested ${clockTime(reachedAt, clock)}`
   if (likelyAt === null) return reason ? predictionReason(reason) : 'nobody knows when'
   if (p90At === null) return `likely ${roughTime(likelyAt, clock, 'up')}${reason ? `, ${predictionReason(reason)}` : ''}`
-  const doubt = Math.max(p90At - likelyAt, likelyAt - clock.now)
+  // As fine as every other line says the cautious end, so that the two never differ by a rounding.
+  const doubt = p90At > clock.now ? p90At - clock.now : p90At - likelyAt
   return `likely ${roughTime(likelyAt, clock, 'up', doubt)}, give it till ${roughTime(p90At, clock, 'up', doubt)}`
 }
 
@@ -94,16 +99,20 @@ export function jobMoment(job: Job, film: FilmState | null, clock: Clock): strin
   if (turn.doing) return asSentence(`${turn.doing.by || 'somebody'} has been at it since ${clockTime(turn.doing.sinceAt, clock)}`)
   if (job.kind === 'release') return releaseText(job, film, clock)
   if (job.kind === 'check') return turn.wantedAt === null ? asSentence(beginReason(because)) : asSentence(turn.wantedAt <= clock.now ? `wanted since ${clockTime(turn.wantedAt, clock)}` : `wanted at ${clockTime(turn.wantedAt, clock)}`)
-  if (job.due && turn.plan) return asSentence(`due since ${clockTime(turn.plan.dueAt, clock)}: is it on`).replace(/\.$/, '?')
-  if (moment?.kind === 'start by') {
-    // "To do both" of a session of two would puzzle beside the names of four pieces.
-    const start = moment.pieces?.all === job.pieces.length ? moment : { ...moment, pieces: null }
-    const why = momentReason(start, clock)
-    return asSentence(why ? `${momentText(start, clock)}; ${why}` : momentText(start, clock))
-  }
+  const start = moment?.kind === 'start by' ? startOf(moment, job, clock) : null
+  if (job.dueAt !== null) return [asSentence(`due since ${clockTime(job.dueAt, clock)}: is it on`).replace(/\.$/, '?'), ...start ? [start] : []].join(' ')
+  if (start) return start
   if (job.may) return asSentence(plannedText(job, clock) ?? 'may begin')
   if (moment && !job.may && because.code !== 'role') return asSentence(`${momentText(moment, clock)}; ${beginReason(because)}`)
   return asSentence(beginReason(because))
+}
+
+/** The last moment, as every screen says it, with its reason; and how many of the session's pieces this job is about. */
+function startOf(moment: StartBy, job: Job, clock: Clock): string {
+  const why = momentReason(moment, clock)
+  const here = moment.pieces !== null && moment.pieces.all > job.pieces.length ? `, ${job.pieces.length} of them here` : ''
+  const waits = job.may || job.because.code === 'role' ? [] : [beginReason(job.because)]
+  return asSentence([`${momentText(moment, clock)}${here}`, ...why ? [why] : [], ...waits].join('; '))
 }
 
 function plannedText({ turn, at }: Job, clock: Clock): string | null {

@@ -2,11 +2,9 @@ import { clockTime, roughTime } from '#shared/time'
 import { betterText, predictionReason } from '#shared/words/verdict'
 import { lowerFirst, milestoneText, stepAct, stepNoun } from '#shared/words/steps'
 import type { BeginReason, StepState } from '#shared/verdict/begin'
-import type { NextMoment } from '#shared/verdict/next'
+import type { NextMoment, StartBy } from '#shared/verdict/next'
 import type { Clock } from '#shared/time'
 import type { DoubtCause, Hold, StepKind, StepStatus } from '#shared/terms'
-
-type StartBy = Extract<NextMoment, { kind: 'start by' }>
 
 function piecesText(pieces: StartBy['pieces']): string {
   if (pieces === null || pieces.all === 1) return ''
@@ -14,10 +12,31 @@ function piecesText(pieces: StartBy['pieces']): string {
   return pieces.all === 2 ? ' to do both' : ` to do all ${pieces.all}`
 }
 
-function startText({ at, what, stepKind, pieces }: StartBy, clock: Clock): string {
-  const noun = stepNoun(stepKind, what)
-  if (at < clock.now) return `late: ${noun} was to start by ${clockTime(at, clock)}${piecesText(pieces)}`
-  return `start ${noun} by ${roughTime(at, clock, 'down')}${piecesText(pieces)}`
+const byText = ({ at, pieces }: StartBy, clock: Clock) => `by ${at < clock.now ? clockTime(at, clock) : roughTime(at, clock, 'down')}${piecesText(pieces)}`
+
+function startText(start: StartBy, clock: Clock): string {
+  const noun = stepNoun(start.stepKind, start.what)
+  return start.at < clock.now ? `late: ${noun} was to start ${byText(start, clock)}` : `start ${noun} ${byText(start, clock)}`
+}
+
+/** "start by 14:35 to do both", where the line says already what. */
+export function startByText(start: StartBy, clock: Clock): string {
+  return start.at < clock.now ? `late: was to start ${byText(start, clock)}` : `start ${byText(start, clock)}`
+}
+
+type Check = Extract<NextMoment, { kind: 'check' }>
+
+/** When a check or a taking out is wanted, where the line says already what: "at 14:00", "from 14:05", "now". */
+export function checkTimeText({ at, out, due }: Pick<Check, 'at' | 'out' | 'due'>, clock: Clock): string {
+  if (due) return 'now'
+  return out === null ? `at ${roughTime(at, clock, 'down')}` : `from ${roughTime(at, clock, 'up')}`
+}
+
+const takeOut: Record<Hold, string> = { clamps: 'take out of clamps', press: 'take out of the press', weight: 'take out from under the weight' }
+
+function checkText(check: Check, clock: Clock): string {
+  if (check.out === null) return `${lowerFirst(check.what)} ${checkTimeText(check, clock)}`
+  return check.due ? takeOut[check.out] : `${takeOut[check.out]} ${checkTimeText(check, clock)}`
 }
 
 /** The next moment of a piece: "sand lightly from 13:55", "start second varnish by 14:35 to do both", "hold by the back from 15:20". */
@@ -29,7 +48,7 @@ export function momentText(moment: NextMoment, clock: Clock): string {
       return moment.open ? act : `${act} from ${roughTime(moment.at, clock, 'up')}`
     }
     case 'better': return betterText({ betterAt: moment.at, betterKind: moment.what, betterGrip: moment.grip }, clock) ?? ''
-    case 'check': return moment.due ? `${lowerFirst(moment.what)} now` : `${lowerFirst(moment.what)} at ${roughTime(moment.at, clock, 'down')}`
+    case 'check': return checkText(moment, clock)
   }
 }
 

@@ -113,12 +113,12 @@ async function readings() {
   const clock = { now: state.at, zone: studioZone(state.studio.zone) }
   return state.pieces.map((piece) => {
     const { verdict, next } = readPiece(piece, state, state.at, null)
-    return { id: piece.id, name: piece.name, parted: new Set(piece.groups.map(group => group.placeId)).size > 1, title: verdictTitle(verdict.kind, verdict.grip), moment: next ? momentText(next, clock) : '' }
+    return { id: piece.id, name: piece.name, parted: new Set(piece.groups.map(group => group.placeId)).size > 1, title: verdictTitle(verdict.kind, verdict.grip), moment: next ? momentText(next, clock) : '', job: next?.kind === 'start by' && next.at > state.at ? next.what : null }
   })
 }
 
 describe('one piece', () => {
-  it('has one verdict and one next moment on board, strip, sheet, wall and piece page', async () => {
+  it('has one verdict and one next moment on board, strip, sheet, wall, Hands, piece page and in the calls', async () => {
     const { page } = await openPage(browser, server.origin, { viewport: { width: 1280, height: 900 } }, maker)
     await visit(page, '/board')
     // Read anew before each screen: the plan goes on while the test looks.
@@ -155,6 +155,19 @@ describe('one piece', () => {
       const head = await page.evaluate(html => new DOMParser().parseFromString(html, 'text/html').querySelector('main header')?.textContent ?? '', body)
       if (!head.includes(asSentence(piece.title)) || !head.includes(asSentence(piece.moment))) wrong.push(`piece page, ${piece.name}: ${head}`)
     }
+    await visit(page, '/hands')
+    pieces = await readings()
+    for (const more of await page.getByRole('button', { name: /^Show \d+ more$/ }).all()) await more.click()
+    const jobs = await page.getByRole('article').allTextContents()
+    const pressed = pieces.filter(piece => piece.job !== null)
+    expect(pressed.length).toBeGreaterThan(2)
+    for (const piece of pressed) {
+      if (!jobs.some(job => job.includes(asSentence(piece.moment).slice(0, -1)))) wrong.push(`hands, ${piece.name}: ${piece.moment}`)
+    }
+    const calls = (await maker.get<{ kind: string, body: string }[]>('/api/reminders')).body.filter(call => call.kind === 'last moment to start')
+    pieces = await readings()
+    // A call that was made and stands open says what its pieces say now.
+    for (const { body } of calls) if (!pieces.some(piece => piece.job !== null && body.includes(asSentence(piece.moment).slice(0, -1)))) wrong.push(`call: ${body}`)
     expect(wrong).toEqual([])
   }, 240_000)
 })

@@ -25,7 +25,8 @@ describe('the day ruler', () => {
     expect(note).toBe('until 17:30; 50 min of work')
   })
   it('sets what a window presses apart, urgent within the hour', () => {
-    const state = studioWith([withTurn(1), withTurn(2)], { sessions: [session(1, at(12.25), [1, 2], at(12.75))] })
+    const pressed = { plan: { startsAt: at(12.25), endsAt: at(12.5), dueAt: at(12.25), memberId: null, sessionId: 1, sessionSize: 2, lastStartAt: at(12.75), firstFew: null, lastStartFewAt: null, afterTest: false } }
+    const state = studioWith([withTurn(1, pressed), withTurn(2, pressed)], { sessions: [session(1, at(12.25), [1, 2], at(12.75))] })
     expect(dayPlan(state, readAll(state, noon), clock).pegs[0]).toMatchObject({ says: 'start by 12:45 to do both', urgent: true })
   })
   it('asks for rags half an hour after the last oil', () => {

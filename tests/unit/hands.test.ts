@@ -89,6 +89,35 @@ describe('the list of the hands', () => {
     expect(answered?.due).toBe(false)
   })
 
+  it('never joins two sessions with last moments of their own, and says each as the piece itself says it', () => {
+    // All may begin since an hour; two are to start by 10:20, the third, alone in the next session, by 10:45.
+    const session = (id: number, size: number, by: number) => planAt(now + 15 * minute, { sessionId: id, sessionSize: size, lastStartAt: now + by * minute })
+    const found = jobs([piece(1, [turn(1, now - hour, { plan: session(1, 2, 20) })]), piece(2, [turn(2, now - hour, { plan: session(1, 2, 20) })]), piece(3, [turn(3, now - hour, { plan: session(2, 1, 45) })])])
+    expect(found.map(job => [jobNames(job), jobMoment(job, null, clock)])).toEqual([
+      ['Tide boxes 1 and 2', 'Start second varnish by 10:20 to do both.'],
+      ['Tide box 3', 'Start second varnish by 10:45.'],
+    ])
+  })
+
+  it('says how many of a session are of this job when it is for more', () => {
+    const plan = planAt(now + 15 * minute, { sessionSize: 3, lastStartAt: now + 20 * minute })
+    const found = jobs([piece(1, [turn(1, now - hour, { plan })]), piece(2, [turn(2, now - hour, { plan }, { key: 'varnish-1' })])])
+    expect(found.map(job => jobMoment(job, null, clock))).toEqual(['Start second varnish by 10:20 to do all 3, 1 of them here.', 'Start second varnish by 10:20 to do all 3, 1 of them here.'])
+  })
+
+  it('asks about the first planned start that passed, and still says the last moment', () => {
+    const plan = (due: number) => planAt(now - due * minute, { sessionSize: 2, lastStartAt: now + 20 * minute })
+    const [job] = jobs([piece(1, [turn(1, now - hour, { plan: plan(10) })]), piece(2, [turn(2, now - hour, { plan: plan(30) })])])
+    expect(job && jobMoment(job, null, clock)).toBe('Due since 9:30: is it on? Start second varnish by 10:20 to do both.')
+  })
+
+  it('says no last moment of work in a shut room', () => {
+    const shut = { ...where, rooms: where.rooms.map(room => ({ ...room, keepOut: { sinceAt: now - hour, opensBy: 'Isaura' } })) }
+    const closed = readPiece(piece(1, [turn(1, now - hour, { plan: planAt(now + hour, { lastStartAt: now + 20 * minute }) })]), shut, now, now)
+    expect(closed.next).toBeNull()
+    expect(handsJobs([closed], clock, now).map(job => jobMoment(job, null, clock))).toEqual([expect.stringContaining('Keep out of')])
+  })
+
   it('puts what the plan wants tomorrow into the next days, though it may begin', () => {
     const [job] = jobs([piece(1, [turn(1, now - hour, { plan: planAt(now + 24 * hour) })])])
     expect(job && [job.may, job.section, jobMoment(job, null, clock)]).toEqual([true, 'days', 'May begin; planned for Wed morning.'])

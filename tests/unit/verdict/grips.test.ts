@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { pieceVerdict } from '#shared/verdict/verdict'
-import { film, hour, moment, part, unpromised } from './facts'
+import { film, hour, minute, moment, part, unpromised } from './facts'
 
 const at = (hours: number, ...parts: ReturnType<typeof part>[]) => pieceVerdict(parts, hour(hours), null)
 
@@ -63,7 +63,7 @@ describe('what a piece may be held by', () => {
 
   it('waits for out of clamps on a glue line, then for somebody to say it is out', () => {
     const glue = film({ kind: 'glue-up', touch: null, hold: 'clamps', strength: moment(hour(38)) })
-    expect(at(10, part({ films: [glue] }))).toMatchObject({ kind: 'hands off', line: 3, reason: { hold: 'clamps', giveTillAt: hour(14) }, betterAt: null })
+    expect(at(10, part({ films: [glue] }))).toMatchObject({ kind: 'hands off', line: 3, reason: { hold: 'clamps', giveTillAt: hour(14) - 20 * minute }, betterAt: null })
     expect(at(15, part({ films: [glue] }))).toMatchObject({ kind: 'hands off', line: 3 })
     expect(at(15, part({ films: [{ ...glue, hold: null }] }))).toMatchObject({ kind: 'may be handled', limits: [{ kind: 'strain', until: hour(38) }] })
   })

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { nextMoment } from '#shared/verdict/next'
+import { groupMoment, nextMoment } from '#shared/verdict/next'
 import type { NextFacts } from '#shared/verdict/next'
 import { hour, minute } from './facts'
 
@@ -16,7 +16,7 @@ describe('the next moment of a piece', () => {
   })
 
   it('is the first of all that is to come', () => {
-    const every = { verdict: handled, lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }], checks: [{ at: hour(12), what: 'Change the blotters' }] }
+    const every = { verdict: handled, lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }], checks: [{ at: hour(12), what: 'Change the blotters', out: null }] }
     expect(nextMoment(facts(every), hour(9), null)).toMatchObject({ kind: 'may begin', at: hour(11), open: false })
     expect(nextMoment(facts({ ...every, mayBegins: [] }), hour(9), null)).toMatchObject({ kind: 'check', at: hour(12), due: false })
     expect(nextMoment(facts({ ...every, mayBegins: [], checks: [] }), hour(9), null)).toMatchObject({ kind: 'start by', at: hour(13.8), shutsAt: hour(15) })
@@ -38,7 +38,7 @@ describe('the next moment of a piece', () => {
 
   it('counts what is past as now, in the order named', () => {
     const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(8) }
-    const due = { at: hour(7), what: 'Turn over' }
+    const due = { at: hour(7), what: 'Turn over', out: null }
     expect(nextMoment(facts({ verdict: handled, mayBegins: [sanding], checks: [due] }), hour(9), null)).toMatchObject({ kind: 'may begin', open: true })
     expect(nextMoment(facts({ verdict: handled, checks: [due] }), hour(9), null)).toMatchObject({ kind: 'check', due: true })
     expect(nextMoment(facts({ lastStarts: [{ ...all, at: hour(8) }], mayBegins: [sanding] }), hour(9), null)).toMatchObject({ kind: 'start by' })
@@ -47,5 +47,25 @@ describe('the next moment of a piece', () => {
   it('opens nothing by the clock of a page cut off', () => {
     const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(9) }
     expect(nextMoment(facts({ mayBegins: [sanding] }), hour(9), hour(9) - 10 * minute)).toMatchObject({ kind: 'may begin', open: false })
+  })
+
+  it('lets nobody take anything out by the clock of a page cut off, but still asks for a check', () => {
+    const out = { at: hour(9), what: 'Glue up the box', out: 'clamps' as const }
+    expect(nextMoment(facts({ checks: [out] }), hour(9), hour(9) - 10 * minute)).toMatchObject({ kind: 'check', due: false })
+    expect(nextMoment(facts({ checks: [{ ...out, out: null }] }), hour(9), hour(9) - 10 * minute)).toMatchObject({ kind: 'check', due: true })
+  })
+})
+
+describe('the one moment of several pieces', () => {
+  const start = (at: number) => ({ kind: 'start by' as const, at, what: 'Second varnish', stepKind: 'coat' as const, shutsAt: null, pieces: null })
+  const begin = (at: number) => ({ kind: 'may begin' as const, at, what: 'Sanding', stepKind: 'light sanding' as const, open: false })
+  const check = (at: number, out: 'clamps' | null) => ({ kind: 'check' as const, at, what: 'Change the blotters', out, due: false })
+
+  it('is the earliest that hands must keep, and the latest that time has to bring', () => {
+    expect(groupMoment([])).toBeNull()
+    expect(groupMoment([begin(hour(9)), start(hour(12)), start(hour(11))])).toEqual(start(hour(11)))
+    expect(groupMoment([begin(hour(9)), begin(hour(10))])).toEqual(begin(hour(10)))
+    expect(groupMoment([check(hour(10), null), check(hour(9), null)])).toEqual(check(hour(9), null))
+    expect(groupMoment([check(hour(9), 'clamps'), check(hour(10), 'clamps')])).toEqual(check(hour(10), 'clamps'))
   })
 })

@@ -32,8 +32,11 @@ describe('next moments in words', () => {
 
   it('says what the verdict gets better to, and checks', () => {
     expect(momentText({ kind: 'better', at: hour(14), what: 'hold by', grip: 'back' }, clock)).toBe('hold by the back from 14:00')
-    expect(momentText({ kind: 'check', at: hour(14), what: 'Change the blotters', due: false }, clock)).toBe('change the blotters at 14:00')
-    expect(momentText({ kind: 'check', at: hour(12), what: 'Change the blotters', due: true }, clock)).toBe('change the blotters now')
+    expect(momentText({ kind: 'check', at: hour(14), what: 'Change the blotters', out: null, due: false }, clock)).toBe('change the blotters at 14:00')
+    expect(momentText({ kind: 'check', at: hour(12), what: 'Change the blotters', out: null, due: true }, clock)).toBe('change the blotters now')
+    // A taking out is never told too early: 13:02 reads as 13:05 where a check would read as 13:00.
+    expect(momentText({ kind: 'check', at: hour(13) + 2 * minute, what: 'Glue up', out: 'clamps', due: false }, clock)).toBe('take out of clamps from 13:05')
+    expect(momentText({ kind: 'check', at: hour(12), what: 'Glue up', out: 'weight', due: true }, clock)).toBe('take out from under the weight')
   })
 })
 

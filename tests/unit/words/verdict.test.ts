@@ -19,7 +19,7 @@ describe('a verdict in words', () => {
   it('says every line of the table', () => {
     expect(line(9, { keepOut: { room: 'Spray room' } })).toBe('hands off: keep out of Spray room')
     expect(line(9, { doing: { by: 'Ada', what: 'Second varnish', since: hour(8) } })).toBe('hands off: Ada has it: second varnish')
-    expect(line(13, { films: [film({ kind: 'glue-up', hold: 'clamps' })] })).toBe('hands off: in clamps: do not loosen; out of clamps from 14:00')
+    expect(line(13, { films: [film({ kind: 'glue-up', hold: 'clamps' })] })).toBe('hands off: in clamps: do not loosen; out of clamps from 13:40')
     expect(line(15, { films: [film({ kind: 'glue-up', hold: 'weight' })] })).toBe('hands off: under weight: do not lift the weight until a maker says it is out')
     expect(line(9, { films: [film({ material: null })] })).toBe('hands off: nobody knows what is on it: a maker tests it first')
     expect(line(9, { films: [film({ doubt: { cause: 'chilled', fromAt: hour(3) } })] })).toBe('hands off: chilled in the night while wet: test or strip; ask first from 14:00')

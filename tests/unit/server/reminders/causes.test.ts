@@ -1,6 +1,6 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { coat, openHours, place, ragDuty, room, stay, touchTest, turn } from '~~/db/schema'
+import { coat, openHours, pieceStep, place, planEntry, planSession, prediction, ragDuty, room, stay, touchTest, turn } from '~~/db/schema'
 import { wantedReminders } from '~~/server/reminders/wanted'
 import { minutes, noon, oil, openStudio, planTurns, startBatch } from './studio'
 import type { TestStudio } from './studio'
@@ -21,15 +21,29 @@ describe('the last moment to start', () => {
     // The words are those of the moment it is made: 13:20.
     const [call, ...more] = wanted(test, noon + minutes(80), 'last moment to start')
     expect(more).toEqual([])
-    expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Second coat: Ledgers, 12 pieces. Start by 13:50 to do all 12, by 14:35 for the first 4.' })
+    expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Ledgers, 12 pieces. Start second coat by 13:50 to do all 12, by 14:35 for the first 4.' })
   })
 
   it('comes again when only the first few can still be done', () => {
     const { test } = withPlan()
     const [call] = wanted(test, noon + minutes(111), 'last moment to start')
     // Half an hour before 14:35 is 14:05, later than 13:50.
-    expect(call).toMatchObject({ stage: 'first few', dueAt: noon + minutes(125), body: 'Second coat: Ledgers, 12 pieces. There is no longer time for all 12. Start by 14:35 for the first 4.' })
+    expect(call).toMatchObject({ stage: 'first few', dueAt: noon + minutes(125), body: 'Ledgers, 12 pieces. There is no longer time for all 12. Start second coat by 14:35 to do the first 4 of 12.' })
     expect(wanted(test, noon + minutes(156), 'last moment to start')).toEqual([])
+  })
+
+  it('is a call of its own for each of two sessions', () => {
+    const test = openStudio()
+    const { turns } = startBatch(test, 4)
+    planTurns(test, turns.slice(0, 2), { startsAt: noon + minutes(60), lastStartAt: noon + minutes(110) })
+    const [first] = wanted(test, noon, 'last moment to start')
+    const plan = test.db.select({ id: planEntry.planId }).from(planEntry).get()?.id ?? 0
+    const { id: sessionId } = test.db.insert(planSession).values({ studioId: test.studioId, planId: plan, family: 'varnish', startsAt: noon, endsAt: noon, setupMin: 5 }).returning({ id: planSession.id }).get()
+    for (const turnId of turns.slice(2)) test.db.insert(planEntry).values({ studioId: test.studioId, planId: plan, turnId, sessionId, startsAt: noon + minutes(100), dueAt: noon + minutes(100), endsAt: noon + minutes(160), lastStartAt: noon + minutes(150) }).run()
+    const calls = wanted(test, noon, 'last moment to start')
+    expect(calls.map(call => call.body)).toEqual(['Ledgers, 2 pieces. Start second coat by 13:50 to do both.', 'Ledgers, 2 pieces. Start second coat by 14:30 to do both.'])
+    expect(calls[0]?.groupKey).toBe(first?.groupKey)
+    expect(calls[1]?.groupKey).not.toBe(first?.groupKey)
   })
 
   it('says nothing while somebody is at it', () => {
@@ -56,14 +70,33 @@ describe('the last moment to start', () => {
 })
 
 describe('ready', () => {
-  it('is due at the planned start and asks again after a failed test', () => {
+  it('is due at the planned start, says from when as the piece does, and asks again after a failed test', () => {
     const test = openStudio()
     const { turns, coatAct } = startBatch(test, 2)
-    planTurns(test, turns, { startsAt: noon + minutes(115) })
-    expect(wanted(test, noon, 'ready')).toMatchObject([{ dueAt: noon + minutes(115), repeat: 0, title: 'Second coat from 13:55', body: 'Ledgers, 2 pieces. Still tacky? Tell us, the time moves.' }])
+    // Hands come at 14:30; it may begin from 13:55.
+    planTurns(test, turns, { startsAt: noon + minutes(150) })
+    expect(wanted(test, noon, 'ready')).toMatchObject([{ dueAt: noon + minutes(150), repeat: 0, title: 'Second coat from 13:55', body: 'Ledgers, 2 pieces. Still tacky? Tell us, the time moves.' }])
+    expect(wanted(test, noon + minutes(150), 'ready')).toMatchObject([{ title: 'Second coat' }])
     const coatId = test.db.select({ id: coat.id }).from(coat).get()?.id ?? 0
     test.db.insert(touchTest).values({ studioId: test.studioId, coatId, actId: coatAct, milestone: 'tack-free', at: noon, reached: false, byRole: 'maker' }).run()
     expect(wanted(test, noon, 'ready')).toMatchObject([{ repeat: 1 }])
+  })
+
+  it('is not due before the film allows it, whatever the plan had hoped', () => {
+    const test = openStudio()
+    const { turns } = startBatch(test, 2)
+    planTurns(test, turns, { startsAt: noon + minutes(60) })
+    expect(wanted(test, noon, 'ready')).toMatchObject([{ dueAt: noon + minutes(115) }])
+  })
+
+  it('says to touch it first where nobody can say when, and nothing of work that something else comes before', () => {
+    const test = openStudio()
+    const { turns } = startBatch(test, 2)
+    planTurns(test, turns, { startsAt: noon + minutes(60) })
+    test.db.update(prediction).set({ likelyAt: null, p90At: null, p98At: null, reason: 'too-damp' }).run()
+    expect(wanted(test, noon, 'ready')).toMatchObject([{ dueAt: noon + minutes(60), title: 'Touch it first: second coat' }])
+    test.db.update(pieceStep).set({ status: 'waiting' }).where(eq(pieceStep.key, 'coat-1')).run()
+    expect(wanted(test, noon, 'ready')).toEqual([])
   })
 
   it('does not speak of work that waits for no film', () => {
@@ -87,7 +120,7 @@ describe('before you leave', () => {
     expect(call).toMatchObject({ dueAt: noon + minutes(330), groupKey: '2026-06-02', title: 'Before you leave at 18:00' })
     expect(call?.body.split('\n')).toEqual([
       'Oily rags from Bench room: say where they are.',
-      'Shuts overnight: Second coat, Ledgers. Start by Wed 3:00.',
+      'Shuts overnight: Ledgers. Start second coat by Wed 3:00.',
       'Bench room: a film is still drying. The times count on the heating tonight.',
       'Lids on: Wood varnish.',
     ])

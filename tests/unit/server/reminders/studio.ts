@@ -1,4 +1,4 @@
-import { act, batch, callChoice, coat, coatTarget, material, materialVersion, member, openHours, part, person, piece, pieceStep, place, plan, planEntry, planSession, ragDuty, room, stay, stepTarget, studio, subscription, turn } from '~~/db/schema'
+import { act, batch, callChoice, coat, coatTarget, material, materialVersion, member, openHours, part, person, piece, pieceStep, place, plan, planEntry, planSession, prediction, ragDuty, room, stay, stepLink, stepTarget, studio, subscription, turn } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
 import type { Role } from '#shared/terms'
 import { testDatabase } from '../../../helpers/database'
@@ -49,7 +49,7 @@ export function oil({ db, studioId, roomId }: TestStudio, at: number, memberId: 
   return db.insert(ragDuty).values({ studioId, roomId, lastOilAt: at, lastOilActId }).returning({ id: ragDuty.id }).get().id
 }
 
-/** A batch whose pieces carry one coat of varnish from one act an hour before noon and wait for the second. */
+/** A batch whose pieces carry one coat of varnish from one act an hour before noon and wait for the second, which may begin from 13:55. */
 export function startBatch(test: TestStudio, count: number) {
   const { db, studioId, maker, roomId } = test
   const batchId = db.insert(batch).values({ studioId, name: 'Ledgers', actId: actOf(db, studioId, 'batch started', noon - minutes(120), maker), startsAt: noon }).returning({ id: batch.id }).get().id
@@ -62,12 +62,14 @@ export function startBatch(test: TestStudio, count: number) {
     const { id: pieceId } = db.insert(piece).values({ studioId, batchId, name: `Ledger ${ordinal}`, ordinal }).returning({ id: piece.id }).get()
     const { id: partId } = db.insert(part).values({ studioId, pieceId, key: 'whole', name: 'whole' }).returning({ id: part.id }).get()
     db.insert(stay).values({ studioId, partId, placeId, fromActId: coatAct, fromAt: noon - minutes(120), seenAt: noon }).run()
-    const stepOf = (key: string, name: string): Row => db.insert(pieceStep).values({ studioId, pieceId, key, ordinal: key === 'coat-1' ? 1 : 2, name, kind: 'coat', origin: 'schedule', materialVersionId: versionId, status: key === 'coat-1' ? 'resting' : 'waiting', pieceMin: 5 }).returning({ id: pieceStep.id }).get()
+    const stepOf = (key: string, name: string): Row => db.insert(pieceStep).values({ studioId, pieceId, key, ordinal: key === 'coat-1' ? 1 : 2, name, kind: 'coat', origin: 'schedule', materialVersionId: versionId, status: key === 'coat-1' ? 'resting' : 'waiting', pieceMin: 5, atFront: key === 'coat-2' }).returning({ id: pieceStep.id }).get()
     const first = stepOf('coat-1', 'First coat')
     const second = stepOf('coat-2', 'Second coat')
     const done = db.insert(turn).values({ studioId, stepId: first.id, ordinal: 1, kind: 'work', minutes: 5, status: 'done', doneAt: noon - minutes(60) }).returning({ id: turn.id }).get()
     const { id: coatId } = db.insert(coat).values({ studioId, pieceId, turnId: done.id, actId: coatAct, kind: 'coat', materialVersionId: versionId, beganAt: noon - minutes(65), endedAt: noon - minutes(60), size: 'normal', ground: 'primed' }).returning({ id: coat.id }).get()
     db.insert(coatTarget).values({ studioId, coatId, partId, layer: 1 }).run()
+    db.insert(prediction).values({ studioId, coatId, ordinal: 0, milestone: 'ready-to-recoat', likelyAt: noon + minutes(90), p90At: noon + minutes(115), p98At: noon + minutes(130) }).run()
+    db.insert(stepLink).values({ studioId, fromStepId: first.id, toStepId: second.id, milestone: 'ready-to-recoat', risk: 'p90' }).run()
     db.insert(stepTarget).values({ studioId, stepId: second.id, partId }).run()
     turns.push(db.insert(turn).values({ studioId, stepId: second.id, ordinal: 1, kind: 'work', minutes: 5 }).returning({ id: turn.id }).get().id)
   }
