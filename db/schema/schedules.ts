@@ -2,9 +2,10 @@ import { sql } from 'drizzle-orm'
 import { check, integer, primaryKey, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
 import { material } from './materials'
+import { howDone, howDoneWords } from './step-columns'
 import { studioColumn } from './studio'
-import { coatSizes, dustClasses, grounds, holds, milestoneNames, placeKinds, risks, stepKinds } from '#shared/terms'
-import type { CoatSize, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, StepKind } from '#shared/terms'
+import { milestoneNames, risks } from '#shared/terms'
+import type { MilestoneName, Risk } from '#shared/terms'
 
 export const finishingSchedule = sqliteTable('finishing_schedule', {
   id: id(),
@@ -49,26 +50,13 @@ export const scheduleStep = sqliteTable('schedule_step', {
   key: text('key').notNull(),
   ordinal: integer('ordinal').notNull(),
   name: text('name').notNull(),
-  kind: text('kind').$type<StepKind>().notNull(),
   materialId: integer('material_id'),
-  coatSize: text('coat_size').$type<CoatSize>().notNull().default('normal'),
-  ground: text('ground').$type<Ground>().notNull().default('primed'),
-  hold: text('hold').$type<Hold>(),
-  placeKind: text('place_kind').$type<PlaceKind>(),
   perDay: integer('per_day').notNull().default(1),
   days: integer('days').notNull().default(1),
-  untilEnough: flag('until_enough').notNull().default(false),
-  setupMin: integer('setup_min').notNull().default(0),
-  pieceMin: integer('piece_min').notNull(),
-  cleanMin: integer('clean_min').notNull().default(0),
-  releaseMin: integer('release_min').notNull().default(0),
-  hands: integer('hands').notNull().default(1),
-  dust: text('dust').$type<DustClass>().notNull().default('none'),
-  mayRunOver: flag('may_run_over').notNull().default(false),
+  ...howDone(),
 }, t => [
   studioKey(t), within(t, t.versionId, scheduleVersion), within(t, t.materialId, material), unique().on(t.versionId, t.key),
-  oneOf('schedule_step_kind', t.kind, stepKinds), oneOf('schedule_step_size', t.coatSize, coatSizes), oneOf('schedule_step_ground', t.ground, grounds),
-  oneOf('schedule_step_hold', t.hold, holds), oneOf('schedule_step_place', t.placeKind, placeKinds), oneOf('schedule_step_dust', t.dust, dustClasses),
+  ...howDoneWords('schedule_step', t),
   check('schedule_step_counts', sql`${t.perDay} > 0 and ${t.days} > 0 and ${t.hands} >= 0`),
   check('schedule_step_minutes', sql`${t.setupMin} >= 0 and ${t.pieceMin} >= 0 and ${t.cleanMin} >= 0 and ${t.releaseMin} >= 0`),
 ])

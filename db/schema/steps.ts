@@ -1,12 +1,13 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, real, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
-import { coatSizes, dustClasses, grounds, holds, milestoneNames, placeKinds, risks, stepKinds, stepOrigins, stepStatuses, turnKinds, turnStatuses } from '#shared/terms'
-import type { CoatSize, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
+import { milestoneNames, risks, stepOrigins, stepStatuses, turnKinds, turnStatuses } from '#shared/terms'
+import type { MilestoneName, Risk, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
 import { act } from './acts'
 import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { materialVersion } from './materials'
 import { face, part, piece } from './pieces'
 import { scheduleStep } from './schedules'
+import { howDone, howDoneWords } from './step-columns'
 import { member, studioColumn } from './studio'
 
 /** A step of one piece, copied from the schedule at the start so that a recovery or a branch can be spliced in. `key` is unique in the piece and survives a refold. */
@@ -17,33 +18,19 @@ export const pieceStep = sqliteTable('piece_step', {
   key: text('key').notNull(),
   ordinal: real('ordinal').notNull(),
   name: text('name').notNull(),
-  kind: text('kind').$type<StepKind>().notNull(),
   origin: text('origin').$type<StepOrigin>().notNull(),
   scheduleStepId: integer('schedule_step_id'),
   insertedByActId: integer('inserted_by_act_id'),
   materialVersionId: integer('material_version_id'),
   status: text('status').$type<StepStatus>().notNull().default('waiting'),
   asideReason: text('aside_reason'),
-  coatSize: text('coat_size').$type<CoatSize>().notNull().default('normal'),
-  ground: text('ground').$type<Ground>().notNull().default('primed'),
-  hold: text('hold').$type<Hold>(),
-  placeKind: text('place_kind').$type<PlaceKind>(),
-  untilEnough: flag('until_enough').notNull().default(false),
-  setupMin: integer('setup_min').notNull().default(0),
-  pieceMin: integer('piece_min').notNull(),
-  cleanMin: integer('clean_min').notNull().default(0),
-  releaseMin: integer('release_min').notNull().default(0),
-  hands: integer('hands').notNull().default(1),
-  dust: text('dust').$type<DustClass>().notNull().default('none'),
-  mayRunOver: flag('may_run_over').notNull().default(false),
+  ...howDone(),
   /** Nothing but drying stands before it, and something of it is left to do: the steps that screens read. */
   atFront: flag('at_front').notNull().default(false),
 }, t => [
   studioKey(t), within(t, t.pieceId, piece), within(t, t.scheduleStepId, scheduleStep), within(t, t.insertedByActId, act), within(t, t.materialVersionId, materialVersion),
   unique().on(t.pieceId, t.key),
-  oneOf('piece_step_kind', t.kind, stepKinds), oneOf('piece_step_origin', t.origin, stepOrigins), oneOf('piece_step_status', t.status, stepStatuses),
-  oneOf('piece_step_size', t.coatSize, coatSizes), oneOf('piece_step_ground', t.ground, grounds), oneOf('piece_step_hold', t.hold, holds),
-  oneOf('piece_step_place', t.placeKind, placeKinds), oneOf('piece_step_dust', t.dust, dustClasses),
+  ...howDoneWords('piece_step', t), oneOf('piece_step_origin', t.origin, stepOrigins), oneOf('piece_step_status', t.status, stepStatuses),
   check('piece_step_aside', sql`(${t.status} = 'set aside') = (${t.asideReason} is not null)`),
   index('piece_step_front').on(t.studioId, t.pieceId).where(sql`${t.atFront} = 1`),
   index('piece_step_open').on(t.studioId, t.pieceId).where(sql`${t.status} in ('waiting', 'doing', 'resting', 'set aside')`),

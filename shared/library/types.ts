@@ -1,6 +1,7 @@
-import type { CoatSize, Driver, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, SourceKey, StepKind } from '#shared/terms'
+import type { CoatSize, Driver, Ground, Hold, MilestoneName, PlaceKind, Risk, SourceKey, StepKind } from '#shared/terms'
 import type { Air, DryingMaterial } from '#shared/drying/types'
 import type { CautionKey } from '#shared/library/cautions'
+import type { StepLabour } from '#shared/work/types'
 
 /** `size` is a size that leaf is laid on; the glue that seals a ground is a `glue size`. */
 export const materialKinds = ['ground', 'primer', 'paint', 'enamel', 'varnish', 'oil', 'lacquer', 'shellac', 'resin', 'wax', 'size', 'glue size', 'bole', 'medium', 'glue', 'paste'] as const
@@ -92,7 +93,7 @@ export interface LibraryTarget { part: string, face?: string }
 export interface LibraryCheck { name: string, afterMin: number, minutes: number }
 
 /** One step. Minutes are attended minutes; `perDay` coats a day on `days` days make a round. */
-export interface LibraryStep {
+export interface LibraryStep extends StepLabour {
   key: string
   name: string
   kind: StepKind
@@ -103,13 +104,6 @@ export interface LibraryStep {
   placeKind?: PlaceKind
   perDay: number
   days: number
-  untilEnough: boolean
-  setupMin: number
-  pieceMin: number
-  cleanMin: number
-  releaseMin: number
-  hands: number
-  dust: DustClass
   mayRunOver: boolean
   targets: readonly LibraryTarget[]
   checks: readonly LibraryCheck[]

@@ -1,4 +1,5 @@
-import type { DustClass, Hold, MilestoneName, Risk, StepKind } from '#shared/terms'
+import type { Hold, MilestoneName, Risk, StepKind } from '#shared/terms'
+import type { StepLabour } from '#shared/work/types'
 
 /**
  * A wait counted from the end of the work, in whole minutes of the studio's usual air: the middle and the cautious end.
@@ -6,25 +7,18 @@ import type { DustClass, Hold, MilestoneName, Risk, StepKind } from '#shared/ter
  */
 export interface WaitWire { likelyMin: number | null, giveTillMin: number | null, promised: boolean }
 
-export interface ScheduleStepWire {
+export interface ScheduleStepWire extends StepLabour {
   key: string
   name: string
   kind: StepKind
   material: { id: number, name: string } | null
   hold: Hold | null
-  dust: DustClass
   /** Names of the parts it works on. */
   parts: string[]
   /** The same with the faces; none listed: the whole part. */
   on: { part: string, faces: string[] }[]
   perDay: number
   days: number
-  untilEnough: boolean
-  setupMin: number
-  pieceMin: number
-  cleanMin: number
-  releaseMin: number
-  hands: number
   checks: { name: string, afterMin: number, minutes: number }[]
   /** Between two coats of a round. */
   again: WaitWire | null

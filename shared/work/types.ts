@@ -21,7 +21,10 @@ export interface Turn {
   notOnAt: number | null
 }
 
-export interface Step {
+/** What a step asks of people: attended minutes and hands, and the dust it makes; `untilEnough` when it is repeated until somebody says so. */
+export interface StepLabour { untilEnough: boolean, setupMin: number, pieceMin: number, cleanMin: number, releaseMin: number, hands: number, dust: DustClass }
+
+export interface Step extends StepLabour {
   key: string
   ordinal: number
   name: string
@@ -36,13 +39,6 @@ export interface Step {
   ground: Ground
   hold: Hold | null
   placeKind: PlaceKind | null
-  untilEnough: boolean
-  setupMin: number
-  pieceMin: number
-  cleanMin: number
-  releaseMin: number
-  hands: number
-  dust: DustClass
   mayRunOver: boolean
   /** Nothing but drying stands before it, and something of it is left to do. */
   atFront: boolean
