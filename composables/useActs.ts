@@ -1,4 +1,4 @@
-import type { ActRequest, TellableKind } from '#shared/schemas/act'
+import type { ActRequest, TellableKind, VapourAnswers } from '#shared/schemas/act'
 import type { PieceState } from '#shared/schemas/piece-state'
 import type { Told } from '~/stores/untold'
 
@@ -20,10 +20,10 @@ export function useActs() {
    * @param pieces as they were on the page: their versions go along, so that a newer act of somebody else wins
    * @param doneAt ms UTC by this page's clock
    */
-  async function tell(kind: TellableKind, pieces: readonly Pick<PieceState, 'id' | 'version'>[], body: ActRequest['body'], doneAt: number, partIds?: number[]): Promise<Told> {
+  async function tell(kind: TellableKind, pieces: readonly Pick<PieceState, 'id' | 'version'>[], body: ActRequest['body'], doneAt: number, partIds?: number[], vapour?: VapourAnswers): Promise<Told> {
     busy.value = true
     try {
-      const act: ActRequest = { clientKey: newClientKey(), kind, doneAt: new Date(doneAt).toISOString(), pieces: pieces.map(({ id, version }) => ({ id, version })), body, ...partIds ? { partIds } : {} }
+      const act: ActRequest = { clientKey: newClientKey(), kind, doneAt: new Date(doneAt).toISOString(), pieces: pieces.map(({ id, version }) => ({ id, version })), body, ...partIds ? { partIds } : {}, ...vapour ? { vapour } : {} }
       last.value = await untold.tell(act)
       if (last.value.outcome !== 'later') await studio.load()
       return last.value

@@ -3,6 +3,7 @@ import type { ComputedRef } from 'vue'
 import { actsOf, filmsOf } from '#shared/hands-acts'
 import type { ActChoice } from '#shared/hands-acts'
 import type { Job } from '#shared/hands'
+import { solventRooms } from '#shared/solvent-rooms'
 import { filmStrip, withFirstShut, worstFilm } from '#shared/piece-strip'
 import { mayDoStep } from '#shared/permissions'
 import { answeredAt } from '#shared/time'
@@ -35,7 +36,9 @@ export function useJob(job: ComputedRef<Job>) {
   })
   const acts = computed(() => {
     const who = studio.who.value
-    return actsOf(job.value, { maker: can('start batches'), step: who ? mayDoStep(who.role, who.helperKinds, job.value.turn.step.kind) : false })
+    const wet = solventRooms(studio.pieces.value.map(read => read.piece), studio.now.value)
+    const solventRoom = job.value.pieces.some(({ read }) => read.piece.groups.some(group => group.roomId !== null && wet.has(group.roomId)))
+    return actsOf(job.value, { solventRoom, maker: can('start batches'), step: who ? mayDoStep(who.role, who.helperKinds, job.value.turn.step.kind) : false })
   })
   const isLater = computed(() => job.value.pieces.some(each => isUntold(each.read.piece.id, untold.acts)))
 

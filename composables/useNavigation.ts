@@ -11,6 +11,7 @@ export function useNavigation() {
     { to: '/schedules', label: shellWords.schedules },
     { to: '/materials', label: shellWords.materials },
     { to: '/air', label: shellWords.air },
+    { to: '/safety', label: shellWords.safety },
     { to: '/sheet', label: shellWords.sheet },
     { to: '/settings', label: shellWords.settings },
   ]

@@ -22,9 +22,10 @@ export interface StartDraft {
   dueDay: string
   dueTime: string
   oldObject: boolean
+  areaM2: number | null
 }
 
-const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false })
+const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null })
 
 /** "Ledger" from "Ledgers", for a start: what one piece of a batch may be called. */
 export function stemOf(batchName: string): string {
@@ -86,7 +87,7 @@ export function requestOf(draft: StartDraft, names: readonly string[], startsAt:
     body: {
       clientKey: draft.clientKey, name: draft.name, scheduleId: draft.scheduleId === 0 ? null : draft.scheduleId, pieces: [...names], sizeUnits: draft.sizeUnits ?? 1, placeId: draft.placeId,
       order: draft.orderName.trim() === '' ? null : { name: draft.orderName, dueAt: dueAt === null ? null : new Date(dueAt).toISOString() },
-      startsAt: new Date(startsAt).toISOString(), oldObject: draft.oldObject,
+      startsAt: new Date(startsAt).toISOString(), oldObject: draft.oldObject, areaM2: draft.areaM2,
     },
   }
 }

@@ -2,7 +2,8 @@ import type { InjectionKey } from 'vue'
 import { FetchError } from 'ofetch'
 import { effectOfAct, wets } from '#shared/effects'
 import type { EffectOf } from '#shared/effects'
-import type { ActRequest, TellableKind } from '#shared/schemas/act'
+import type { ActRequest, TellableKind, VapourAnswers } from '#shared/schemas/act'
+import type { VapourAsked } from '#shared/schemas/vapour'
 import type { PieceState } from '#shared/schemas/piece-state'
 import { milestoneNames } from '#shared/terms'
 import { effectText, toldWords } from '#shared/words/hands'
@@ -49,6 +50,9 @@ function lateTaps(told: ReturnType<typeof useToldStore>) {
   }
 }
 
+/** The question that came in place of an answer: solvent work wants three things said first. */
+const questionIn = (current: unknown): VapourAsked | null => (typeof current === 'object' && current !== null && 'ask' in current && current.ask === 'vapour' ? current as VapourAsked : null)
+
 function makeTelling(studio: Studio) {
   const { tell, correct, busy } = useActs()
   const told = useToldStore()
@@ -64,18 +68,34 @@ function makeTelling(studio: Studio) {
     return { effect: next ? toldWords.next(momentText(next, studio.clock.value)) : '', now: null }
   }
 
-  async function say(telling: Telling) {
+  /** Solvent work that waits for its three answers: nothing of it is recorded before. */
+  const asked = shallowRef<{ telling: Telling, what: VapourAsked }[]>([])
+
+  async function say(telling: Telling, vapour?: VapourAnswers) {
     const pieceIds = telling.pieces.map(piece => piece.id)
     const base = { kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds, step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt }
     const before = wets(telling.kind) ? null : effectNow({ ...base, rootId: null })
-    const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds)
+    const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds, vapour)
     const blank = { ...base, clientKey: null, actId: null, rootId: null, effect: '', before, problem: null }
     if (answer.outcome === 'later') return told.add({ ...blank, state: 'later', clientKey: answer.clientKey })
+    const question = answer.outcome === 'refused' ? questionIn(answer.current) : null
+    if (question) {
+      asked.value = [...asked.value, { telling, what: question }]
+      return null
+    }
     if (answer.outcome === 'refused') return told.add({ ...blank, state: 'refused', problem: Object.values(answer.fields)[0] ?? answer.message })
     const line = { ...blank, state: 'told' as const, actId: answer.actId, rootId: answer.actId }
     const { effect, now } = describe(line)
     return told.add({ ...line, effect, before: now })
   }
+
+  /** The three answers, for everything that waits for them. */
+  async function answer(vapour: VapourAnswers) {
+    const waiting = asked.value
+    asked.value = []
+    for (const { telling } of waiting) await say({ ...telling, pieces: current(telling.pieces.map(piece => piece.id)) }, vapour)
+  }
+  const leave = () => { asked.value = [] }
 
   async function amend(line: ToldLine, change: { doneAt?: number, takeBack?: boolean }) {
     if (line.actId === null || busy.value) return
@@ -101,7 +121,7 @@ function makeTelling(studio: Studio) {
     await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material })
   }
 
-  return { say, again, dropLater: lateTaps(told), busy, told, undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
+  return { say, again, dropLater: lateTaps(told), busy, told, asked, answer, leave, undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
 }
 
 type TellingOnPage = ReturnType<typeof makeTelling> & { studio: Studio }

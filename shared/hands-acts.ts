@@ -11,7 +11,7 @@ export interface ActChoice { label: string, kind: TellableKind, body: ActRequest
 export interface JobActs { main: ActChoice | null, second: ActChoice | null, more: ActChoice[] }
 
 /** What the person at the page may do: steps of this kind, and what only makers do. */
-export interface Hands { step: boolean, maker: boolean }
+export interface Hands { step: boolean, maker: boolean, solventRoom?: boolean }
 
 const doneKinds: Partial<Record<StepKind, TellableKind>> = { 'coat': 'coat on', 'glue-up': 'glue-up on', 'turn over': 'turned over' }
 
@@ -35,12 +35,12 @@ function tests(job: Job): { tested: ActChoice, tacky: ActChoice } | null {
 }
 
 /** What only now and then happens to what is drying. */
-function filmActs(films: readonly FilmState[]): ActChoice[] {
+function filmActs(films: readonly FilmState[], solventRoom: boolean): ActChoice[] {
   const drying = films.filter(film => film.hold === null)
   if (drying.length === 0) return []
   const air = (label: string, kind: 'warm air' | 'sun' | 'shade', hint?: string): ActChoice => ({ label, kind: 'air', body: { kind }, hint, perPart: true })
-  // Warm air feeds the vapour of a solvent film: it is not offered there at all.
-  const warm = drying.some(film => film.solventBorne) ? [] : [air(actKeys.warmAir, 'warm air', handsWords.warmHint)]
+  // Warm air feeds the vapour of a solvent film: it is not offered there, nor beside one in the same room.
+  const warm = solventRoom || drying.some(film => film.solventBorne) ? [] : [air(actKeys.warmAir, 'warm air', handsWords.warmHint)]
   const run: ActChoice[] = drying.some(film => film.kind === 'coat') ? [{ label: handsWords.run, kind: 'dropped out', body: {}, hint: handsWords.runHint }] : []
   return [...run, ...warm, air(actKeys.sun, 'sun'), air(actKeys.shade, 'shade')]
 }
@@ -82,7 +82,7 @@ function ranked(job: Job): { act: ActChoice, who: 'step' | 'maker' | 'anybody' }
  */
 export function actsOf(job: Job, hands: Hands): JobActs {
   const mine = ranked(job).filter(({ who }) => (who === 'step' ? hands.step : who === 'maker' ? hands.maker : true)).map(({ act }) => act)
-  const rare = hands.maker ? [...stepActs(job), ...filmActs(filmsOf(job.pieces))] : []
+  const rare = hands.maker ? [...stepActs(job), ...filmActs(filmsOf(job.pieces), hands.solventRoom ?? false)] : []
   // What nothing but a wish speaks for stands under More: it is told, but never pressed by mistake.
   const stuck = job.section === 'waiting' && job.tests === null && job.turn.step.status !== 'set aside'
   if (stuck) return { main: null, second: null, more: [...mine, ...rare] }

@@ -1,5 +1,6 @@
-import { and, eq, inArray, isNull } from 'drizzle-orm'
-import { keepOut, material, materialVersion, part, pieceStep, statement, stepTarget, vapourStart } from '~~/db/schema'
+import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
+import { keepOut, material, materialVersion, part, pieceStep, statement, stepTarget, studioRule, vapourStart } from '~~/db/schema'
+import { cautionsOf } from '~~/server/services/cautions'
 import { memberNames } from '~~/server/services/member-names'
 import { openStarts } from '~~/server/services/vapour-facts'
 import type { StartRow } from '~~/server/services/vapour-facts'
@@ -10,6 +11,7 @@ import { scoped } from '~~/server/utils/scoped'
 import { roomOfPlace, roomsOfParts } from '~~/server/work/rooms-of-parts'
 import type { RoomRow } from '~~/server/work/rooms-of-parts'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
+import type { VapourAsked } from '#shared/schemas/vapour'
 import { isSolventBorne } from '#shared/vapour/facts'
 import { listText } from '#shared/words/group'
 import { startVapour } from '#shared/words/vapour-starts'
@@ -20,7 +22,7 @@ export const sessionMs = 4 * 60 * 60_000
 /** Kinds of act that begin solvent work or say that it was done. */
 const starting: readonly TellableKind[] = ['began', 'coat on', 'glue-up on']
 
-interface Material { name: string | null, solvent: string | null, isocyanate: boolean }
+interface Material { name: string | null, solvent: string | null, isocyanate: boolean, cautions: readonly string[] }
 
 /** The materials an act would put on: of the step named, or named in the act itself. Null material: a film that nobody can name. */
 function materialsOf(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>): Material[] {
@@ -34,9 +36,9 @@ function materialsOf(tx: Transaction, studioId: number, request: ActRequest, bod
   const known = versionIds.flatMap(id => id ?? [])
   const rows = known.length === 0
     ? []
-    : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId))
+    : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate, cautions: materialVersion.cautions }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId))
         .where(scoped(materialVersion, studioId, inArray(materialVersion.id, known))).all()
-  return rows.length < Math.max(1, versionIds.length) ? [...rows, { name: null, solvent: null, isocyanate: false }] : rows
+  return rows.length < Math.max(1, versionIds.length) ? [...rows, { name: null, solvent: null, isocyanate: false, cautions: ['vapour', 'flames'] }] : rows
 }
 
 /** The rooms the work is done in: where its parts stand, and where a glue-up goes. */
@@ -81,13 +83,18 @@ export function refuseVapour(tx: Transaction, studioId: number, memberId: number
   const starts = openStarts(tx, studioId)
   const asked = rooms.filter(each => !covers(starts.get(each.id), each, request.kind, now))
   if (asked.length === 0) return null
-  if (!request.vapour) return conflict(startVapour.ask(listText(asked.map(each => each.name))), { ask: 'vapour', rooms: asked.map(({ id, name, outdoor, sprayArea }) => ({ id, name, outdoor, sprayArea })) })
+  if (!request.vapour) return conflict(startVapour.ask(listText(asked.map(each => each.name))), {
+    ask: 'vapour', rooms: asked.map(({ id, name, outdoor, sprayArea }) => ({ id, name, outdoor, sprayArea })),
+    cautions: cautionsOf([...asked.some(each => each.sprayArea) ? [{ name: '', cautions: ['phones'] }] : [], ...work.materials.map(each => ({ name: each.name ?? '', cautions: each.cautions }))]), rules: rulesOf(tx, studioId),
+  } satisfies VapourAsked)
   if (!request.vapour.flamesOff) return impossible(startVapour.flamesOn)
   return request.vapour.nobodyElse ? null : impossible(startVapour.somebodyThere)
 }
 
 const partsOf = (tx: Transaction, studioId: number, pieceIds: readonly number[]) =>
   tx.select({ id: part.id }).from(part).where(scoped(part, studioId, inArray(part.pieceId, [...pieceIds]), isNull(part.intoPartId))).all().map(row => row.id)
+
+const rulesOf = (tx: Transaction, studioId: number) => tx.select({ text: studioRule.text }).from(studioRule).where(scoped(studioRule, studioId, isNull(studioRule.withdrawnAt))).orderBy(asc(studioRule.id)).all().map(row => row.text)
 
 const hasStatement = (tx: Transaction, studioId: number) => tx.select({ id: statement.id }).from(statement).where(scoped(statement, studioId, eq(statement.kind, 'isocyanate'), isNull(statement.withdrawnAt))).get() !== undefined
 

@@ -2,6 +2,7 @@ import * as z from 'zod/mini'
 import type { Contribution, Levers, RoomSums } from '#shared/vapour/picture'
 import type { CautionKey } from '#shared/library/cautions'
 import type { ExhaustAnswer, RagAnswer } from '#shared/terms'
+import type { CautionWire } from '#shared/schemas/schedule'
 import { fields } from '#shared/words/fields'
 
 const figure = (low: number, high: number, sentence: string) => z.nullable(z.number(sentence).check(z.gte(low, sentence), z.lte(high, sentence)))
@@ -27,6 +28,9 @@ export const statementBody = z.strictObject({ kind: z.literal('isocyanate'), tex
 
 /** PATCH /api/pieces/[id]/area and a whole batch's likewise. m2. */
 export const areaBody = z.strictObject({ areaM2: figure(0.0001, 1000, fields.area) })
+
+/** What stands beside the refusal (409) of solvent work that came without its answers: where they are asked for, and what to mind. */
+export interface VapourAsked { ask: 'vapour', rooms: { id: number, name: string, outdoor: boolean, sprayArea: boolean }[], cautions: CautionWire[], rules: string[] }
 
 /** A start of solvent work with the answers, and who has seen the call about it. */
 export interface StartState { id: number, at: number, by: string | null, exhaust: ExhaustAnswer, reminderId: number | null, seenBy: { name: string, at: number }[], unseenBy: string[] }

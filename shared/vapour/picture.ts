@@ -28,7 +28,10 @@ export interface RoomSums {
 const instant = 0.01
 const dayMs = 24 * 3_600_000
 /** A solvent film has given off all but a ten-thousandth after four times its touch-dry (first order), and none of it is counted after a day more. */
-const spent = ({ at, solvent, sheetTouchMinutes, foretoldTouchMinutes }: CoatFacts, now: number) => isSolventBorne(solvent) && sheetTouchMinutes !== null && now - at > dayMs + 4 * Math.max(sheetTouchMinutes, foretoldTouchMinutes ?? 0) * 60_000
+function spent({ at, solvent, sheet, sheetTouchMinutes, foretoldTouchMinutes }: CoatFacts, now: number): boolean {
+  const touch = sheet?.touchDryMinutes ?? sheetTouchMinutes
+  return isSolventBorne(solvent) && touch !== null && now - at > dayMs + 4 * Math.max(touch, foretoldTouchMinutes ?? 0) * 60_000
+}
 
 const least = (values: (number | null)[]) => {
   const known = values.filter(value => value !== null)

@@ -39,7 +39,7 @@ export const callWords = {
   },
   rags: {
     title: 'Where are the oily rags?',
-    body: (room: string, last: string) => `${room}, last oil at ${last}. Rags, pads, towels, steel wool and sanding dust can catch fire by themselves hours later. Flat outdoors in one layer, or in the water can? We ask again until somebody answers. Follow the product's safety data sheet and your local rules.`,
+    body: (room: string, last: string) => `${room}, last oil at ${last}. Rags, pads, towels, steel wool and the bag of the sander can catch fire by themselves hours later. Flat outdoors in one layer, or in the water can? We ask again until somebody answers. Follow the product's safety data sheet and your local rules.`,
     sayWhere: 'Say where the rags are: flat outdoors, in the water can, or not dealt with.',
     answeredAlready: 'Somebody has answered for these rags already.',
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,

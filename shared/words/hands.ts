@@ -167,6 +167,6 @@ export const toldWords = {
 /** Oily rags, asked until somebody says. */
 export const ragWords = {
   ask: (room: string) => `Where are the oily rags from ${room}?`,
-  since: (time: string) => `Oil was last on the rags at ${time}. Heaped rags can set themselves alight.`,
+  since: (time: string) => `Oil was last on the rags at ${time}. Heaped rags can set themselves alight. Pads, towels, steel wool and the bag of the sander count too.`,
   answers: { 'flat outdoors': 'Spread flat outdoors', 'in water can': 'In the water can', 'not dealt with': 'Not dealt with yet' },
 } as const

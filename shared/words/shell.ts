@@ -12,6 +12,7 @@ export const shellWords = {
   schedules: 'Finishing schedules',
   materials: 'Materials',
   air: 'Air',
+  safety: 'Safety',
   settings: 'Settings',
   putOn: 'Put on',
   putOnLong: 'I put something on',
