@@ -38,7 +38,7 @@ function actionsFor(path: string): Action[] {
 
 /** The notification of a push. The tag is the delivery's stable id, so that a repeat replaces itself. */
 export function noticeFor({ title, body, path, tag }: PushPayload): Notice {
-  return { title, options: { body, tag, data: { path }, requireInteraction: path.includes('rags='), actions: actionsFor(path) } }
+  return { title, options: { body, tag, data: { path }, requireInteraction: /[?&](rags|start)=/.test(path), actions: actionsFor(path) } }
 }
 
 /** The page that a press opens. A key says what to ask there; nothing is recorded before the page has asked. */

@@ -2,6 +2,7 @@ import { eq, inArray } from 'drizzle-orm'
 import { act, part } from '~~/db/schema'
 import { actingOf, checkTime, parseActBody } from '~~/server/services/acts'
 import type { Recorded, Teller } from '~~/server/services/acts'
+import { refuseByCaution } from '~~/server/services/act-cautions'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -37,6 +38,8 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
     const subjects = correctedSubjects(tx, studioId, old, was, request, now)
     if (isRefusal(subjects)) return subjects
     const doneAt = request.doneAt === undefined ? old.doneAt : Date.parse(request.doneAt)
+    const caution = request.takeBack ? null : refuseCorrected(tx, studioId, teller, old, body, subjects, now)
+    if (caution) return caution
     const rootId = old.rootActId ?? old.id
     const newId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: old.kind, doneAt, toldAt: now, acting: actingOf(teller), body: { ...body }, subjects, replaces: { id: old.id, rootId }, voided: request.takeBack ?? false })
     const pieceIds = piecesOf(tx, studioId, [...was, ...subjects].map(each => each.partId))
@@ -54,6 +57,14 @@ function findRefusal(tx: Transaction, studioId: number, teller: Teller, old: Act
   if (replaced || old.voided) return conflict(actRefusals.corrected, pieceStates(tx, studioId, piecesOf(tx, studioId, was.map(each => each.partId))))
   const times = [old.doneAt, ...(request.doneAt ? [Date.parse(request.doneAt)] : []), ...(request.times ?? []).map(each => Date.parse(each.doneAt))]
   return times.map(at => checkTime(at, now)).find(refusal => refusal !== null) ?? null
+}
+
+/** What a caution refuses at an act it refuses at its correction: no wet solvent film is corrected into a bedroom. The three answers were given with the act. */
+function refuseCorrected(tx: Transaction, studioId: number, teller: Teller, old: ActRow, body: Record<string, unknown>, subjects: readonly Subject[], now: number): Refusal | null {
+  if (old.kind === 'began') return null
+  const ids = piecesOf(tx, studioId, subjects.map(each => each.partId))
+  const request = { clientKey: old.clientKey, kind: old.kind as TellableKind, doneAt: new Date(old.doneAt).toISOString(), pieces: ids.map(id => ({ id, version: 1 })), partIds: subjects.map(each => each.partId), body, vapour: { exhaust: 'running' as const, flamesOff: true, nobodyElse: true } }
+  return refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
 }
 
 /** The subjects moved by as much as the act is, put onto other pieces, or timed one by one. */
