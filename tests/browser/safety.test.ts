@@ -85,7 +85,7 @@ describe('the air of a room, from its set-up to its opening', () => {
     await spray(page).getByText('260 m³/h').first().waitFor()
     await spray(page).getByText('160 m³/h').first().waitFor()
     await spray(page).getByText('An exhaust rated for vapour that moves 260 m³/h.').waitFor()
-    await page.getByText(/Wren began solvent work in Spray room .+\. The exhaust was said to run\./).waitFor()
+    await page.getByText(/Wren began solvent work in Spray room, .+\. The exhaust was said to run\./).waitFor()
     expect(problems).toEqual([])
   }, 240_000)
 
