@@ -120,7 +120,7 @@ describe('calls', () => {
     expect((await owner.put('/api/calls', { kind: 'ready', wanted: false })).status).toBe(200)
     const rags = await owner.put<Refused>('/api/calls', { kind: 'rags', wanted: false })
     expect(rags.status).toBe(422)
-    expect(rags.body.data.message).toBe('The call about oily rags cannot be switched off.')
+    expect(rags.body.data.message).toBe('Calls about fire cannot be switched off.')
     expect((await owner.get('/api/calls')).body).toContainEqual({ kind: 'ready', wanted: false, fixed: false })
     expect((await owner.get('/api/calls')).body).toContainEqual({ kind: 'rags', wanted: true, fixed: true })
   })
