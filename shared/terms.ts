@@ -87,6 +87,10 @@ export type Channel = typeof channels[number]
 export const ragAnswers = ['flat outdoors', 'in water can', 'not dealt with'] as const
 export type RagAnswer = typeof ragAnswers[number]
 
+/** What somebody answers to a piece of advice about a coat. The last three are about haze. */
+export const adviceAnswers = ['seen', 'waiting', 'going on', 'haze'] as const
+export type AdviceAnswer = typeof adviceAnswers[number]
+
 export const reminderStatuses = ['due', 'claimed', 'sent', 'answered', 'withdrawn'] as const
 export const deliveryStatuses = ['queued', 'sending', 'accepted', 'unknown', 'gone', 'failed'] as const
 export const planStatuses = ['optimal', 'feasible', 'infeasible'] as const

@@ -1,14 +1,14 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
-import { airNoteKinds, coatKinds, coatSizes, doubtCauses, grounds, holds, milestoneNames, roles } from '#shared/terms'
-import type { AirNoteKind, CoatKind, CoatSize, DoubtCause, Ground, Hold, MilestoneName, Role } from '#shared/terms'
+import { adviceAnswers, airNoteKinds, coatKinds, coatSizes, doubtCauses, grounds, holds, milestoneNames, roles } from '#shared/terms'
+import type { AdviceAnswer, AirNoteKind, CoatKind, CoatSize, DoubtCause, Ground, Hold, MilestoneName, Role } from '#shared/terms'
 import { act } from './acts'
 import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { materialVersion, mix, tin } from './materials'
 import { face, part, piece } from './pieces'
 import { room } from './places'
 import { turn } from './steps'
-import { studioColumn } from './studio'
+import { member, studioColumn } from './studio'
 
 /** A coat that is on, or a glue-up. `settledAt` is set once the film can no longer change any answer: hot queries read only the others. */
 export const coat = sqliteTable('coat', {
@@ -116,3 +116,14 @@ export const airNote = sqliteTable('air_note', {
   studioKey(t), within(t, t.partId, part), within(t, t.roomId, room), within(t, t.actId, act), oneOf('air_note_kind', t.kind, airNoteKinds),
   check('air_note_where', sql`(${t.partId} is null) <> (${t.roomId} is null)`), index('air_note_of_part').on(t.partId),
 ])
+
+/** What somebody answered to a piece of advice about a coat, so that it is not asked again; of haze, what a material does here. */
+export const adviceAnswer = sqliteTable('advice_answer', {
+  id: id(),
+  studioId: studioColumn(),
+  coatId: integer('coat_id').notNull(),
+  code: text('code').notNull(),
+  answer: text('answer').$type<AdviceAnswer>().notNull(),
+  memberId: integer('member_id').notNull(),
+  at: instant('at').notNull(),
+}, t => [studioKey(t), belongsTo(t, t.coatId, coat), within(t, t.memberId, member), unique().on(t.coatId, t.code), oneOf('advice_answer_word', t.answer, adviceAnswers)])

@@ -9,6 +9,7 @@ import type { Database } from '~~/server/utils/database'
 import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
+import { adviceLines } from '~~/server/services/advice'
 import { predictFilms } from '~~/server/work/predict'
 import { foldPieces } from '~~/server/work/refold'
 import type { FoldedPiece } from '~~/server/work/refold'
@@ -67,7 +68,8 @@ function readLayers(db: Database, studioId: number, pieceId: number): LayerLine[
 function readReasons(db: Database, studioId: number, pieceId: number, now: number): PieceDetail['films'] {
   const predicted = predictFilms(db, studioId, [pieceId], now)
   const rates = ratesOf(db, studioId, predicted.map(each => each.coat.id), now)
-  return predicted.map(({ coat: { id }, prediction }) => ({ coatId: id, rate: rates.find(each => each.coatId === id) ?? null, advice: prediction.advice.map(each => each.text) }))
+  const advice = adviceLines(db, studioId, predicted.map(({ coat: row, prediction }) => ({ id: row.id, versionId: row.materialVersionId, advice: prediction.advice })))
+  return predicted.map(({ coat: { id } }) => ({ coatId: id, rate: rates.find(each => each.coatId === id) ?? null, advice: advice.get(id) ?? [] }))
 }
 
 /** What each question about an old object warns of while it is not answered with "tested, none". */

@@ -76,6 +76,7 @@ export const routes: Record<string, RouteCase> = {
   'materials/[id]/learned.get.ts': { least: 'helper', apart: 'row', at: 'material' },
   'materials/[id]/reset.post.ts': { least: 'maker', apart: 'row', at: 'material', body: () => ({ forget: true }) },
   'materials/[id]/tin.post.ts': { least: 'maker', apart: 'row', at: 'material' },
+  'coats/[id]/advice.post.ts': { least: 'helper', apart: 'row', at: 'coat', body: () => ({ code: 'blush', answer: 'going on' }) },
   'week.get.ts': { least: 'helper', apart: 'view' },
   'air.get.ts': { least: 'helper', apart: 'view' },
   'materials/recent.get.ts': { least: 'helper', apart: 'view' },

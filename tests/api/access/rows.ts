@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, subscription: number, material: number, invitationToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, subscription: number, material: number, invitationToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -32,15 +32,16 @@ function versionOf(file: string, piece: number) {
   return version ?? 0
 }
 
-/** What comes about by the clock alone, so that no request can make it: a rag duty and a call. */
-function writeCalls(file: string, room: number, act: number) {
+/** What comes about by the clock alone, so that no request can make it: a rag duty and a call; and a settled coat, which asks for a schedule. */
+function writeCalls(file: string, room: number, act: number, piece: number) {
   const db = new Sqlite(file)
   const insert = (sql: string, ...values: unknown[]) => Number(db.prepare(sql).run(...values).lastInsertRowid)
   const ragDuty = insert('insert into rag_duty (studio_id, room_id, last_oil_at, last_oil_act_id) values (1, ?, ?, ?)', room, Date.now(), act)
   const cause = insert(`insert into cause (studio_id, kind, subject_type, subject_id, group_key, made_at) values (1, 'ready', 'turn', 1, 'g', ?)`, Date.now())
   const reminder = insert(`insert into reminder (studio_id, cause_id, stage, due_at, status, title, body, path) values (1, ?, 'first', ?, 'sent', ?, '', '/hands')`, cause, Date.now(), `${marker} call`)
+  const coat = insert(`insert into coat (studio_id, piece_id, act_id, kind, began_at, ended_at, size, ground, settled_at) values (1, ?, ?, 'coat', ?, ?, 'normal', 'primed', ?)`, piece, act, Date.now(), Date.now(), Date.now())
   db.close()
-  return { ragDuty, reminder }
+  return { ragDuty, reminder, coat }
 }
 
 /** Fills the first studio with a row of everything that has a number in a path. */
@@ -65,7 +66,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   if (!schedule) throw new Error('The first studio has no finishing schedule.')
   const [material] = (await owner.get<{ id: number }[]>('/api/materials')).body
   if (!material) throw new Error('The first studio has no material.')
-  const calls = writeCalls(databaseFile, room.id, seen.body.actId)
+  const calls = writeCalls(databaseFile, room.id, seen.body.actId, piece)
   const last = (path: string) => path.split('/').at(-1) ?? ''
   return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
 }
