@@ -135,7 +135,7 @@ export interface RungLearned { parts: readonly { weight: number, mean: number, v
 
 /**
  * The score of a chance: the divisions' own quantiles averaged by their weights, every part widened by `extra`. Not the quantile of the
- * mixture: a division that is all but ruled out would still own its far tail, and benches that are even would be kept waiting for it.
+ * mixture: it is one sum instead of a search, and a division that is all but ruled out does not own the far tail.
  */
 function pooledScore(parts: RungLearned['parts'], p: number, extra: number): number {
   const z = normalQuantile(p)

@@ -44,7 +44,7 @@ function inTheStudio(): { rows: Line[], given: Record<string, unknown> } {
   const studio = testStudio(began)
   const who = studio.members.maker
   const readings = [[0, 17, 0.62], [6, 21, 0.5], [24, 16, 0.66], [28, 22, 0.48]].map(([hours, tempC, rh]) => ({ at: began + hours! * hour, tempC: tempC!, rh: rh! }))
-  for (const [i, { at, tempC, rh }] of readings.entries()) addReading(studio.db, studio.studioId, who.id, studio.rooms.bench, { clientKey: `reading-${i}`, at: iso(at), tempC, rh, words: null }, at)
+  for (const [i, { at, tempC, rh }] of readings.entries()) addReading(studio.db, studio.studioId, who.id, studio.rooms.bench, { clientKey: `reading-${i}`, at: iso(at), tempC, rh, words: null, same: false }, at)
   let told = 0
   const tell = (kind: ActRequest['kind'], pieceId: number, at: number, body: ActRequest['body']) => {
     const pieces = pieceStates(studio.db, studio.studioId, [pieceId]).map(({ id, version }) => ({ id, version }))

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { libraryMaterials } from '#shared/library/index'
 import { dryingMaterial } from '#shared/library/types'
+import type { RoomClock } from '#shared/drying/clock'
 import { roomClock } from '#shared/drying/clock'
 import { prepareMaterial } from '#shared/drying/material'
 import { predictCoat } from '#shared/drying/predict'
@@ -19,7 +20,7 @@ import { at, coatAt, minuteMs, steadyRoom, tools } from '../../helpers/drying'
 const now = at('2026-06-01T08:00:00Z')
 const temps = [-5, 0, 5, 10, 15, 20, 25, 30, 35, 40]
 const humidities = [0.05, 0.2, 0.35, 0.5, 0.65, 0.8, 0.9, 0.95, 1]
-const clocks = new Map(temps.flatMap(tempC => humidities.map(rh => [`${tempC} ${rh}`, roomClock(steadyRoom(tempC, rh, now), now, tools)] as const)))
+const clocks = new Map<string, RoomClock>(temps.flatMap(tempC => humidities.map(rh => [`${tempC} ${rh}`, roomClock(steadyRoom(tempC, rh, now), now, tools)] as const)))
 
 function sillyTimes({ milestones }: CoatPrediction): string[] {
   const found: string[] = []
@@ -69,7 +70,7 @@ describe('every starter material in every climate', () => {
   it.each(libraryMaterials.map(m => [m.key, dryingMaterial(m)] as const))('%s gives no silly answer', (_, material) => {
     const prepared = prepareMaterial(material, tools)
     const coat = coatAt(now)
-    const said = new Map(temps.flatMap(tempC => humidities.map(rh => [`${tempC} ${rh}`, predictCoat(prepared, coat, [{ clock: clocks.get(`${tempC} ${rh}`)!, fromAt: now, toAt: null }], { now })] as const)))
+    const said = new Map<string, CoatPrediction>(temps.flatMap(tempC => humidities.map(rh => [`${tempC} ${rh}`, predictCoat(prepared, coat, [{ clock: clocks.get(`${tempC} ${rh}`)!, fromAt: now, toAt: null }], { now })] as const)))
     const silly: string[] = []
     const rungs = prepared.rungs.map(r => r.driver)
     for (const [t, tempC] of temps.entries()) {
