@@ -29,8 +29,9 @@ const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', co
 
 /** "Ledger" from "Ledgers", for a start: what one piece of a batch may be called. */
 export function stemOf(batchName: string): string {
-  const last = batchName.trim().split(/\s+/).at(-1) ?? ''
-  const one = last.length > 3 && last.endsWith('s') && !last.endsWith('ss') ? last.slice(0, -1) : last
+  const name = batchName.trim()
+  const last = name.split(/\s+/).at(-1) ?? ''
+  const one = last.length > 3 && last.endsWith('s') && !last.endsWith('ss') ? name.slice(0, -1) : name
   return one.charAt(0).toUpperCase() + one.slice(1)
 }
 

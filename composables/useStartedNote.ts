@@ -1,2 +1,2 @@
-/** The sentence a page leaves for the next one after a batch was started; null once somebody has put it away. */
-export const useStartedNote = () => useState<string | null>('started note', () => null)
+/** What was started, for the next page: its sentence and its pieces; null once somebody has put it away. */
+export const useStartedNote = () => useState<{ says: string, pieceIds: number[] } | null>('started note', () => null)

@@ -1,8 +1,13 @@
 import type { FilmDriver, RoomAirState } from '#shared/schemas/air'
+import type { MovedRung } from '#shared/moved'
 import type { ReadingSource } from '#shared/terms'
 import { ago, span } from '#shared/time'
+import type { Clock } from '#shared/time'
 import { humidityText, temperatureText } from '#shared/units'
 import type { Units } from '#shared/units'
+import { groupNames } from '#shared/words/group'
+import { effectText } from '#shared/words/hands'
+import { lowerFirst } from '#shared/words/steps'
 
 /** What the page of the air says. */
 export const airWords = {
@@ -73,4 +78,10 @@ export function movedText(count: number, mostMs: number): string {
   if (count === 0) return airWords.nothingMoves
   const by = `${span(Math.abs(mostMs) / 60_000)} ${mostMs > 0 ? 'later' : 'sooner'}`
   return count === 1 ? `One film moves: by ${by}.` : `${count} films move: the most by ${by}.`
+}
+
+/** "Tide boxes 1–4, first paint. Ready to recoat: likely 16:20, give it till 17:05. It was likely 15:50, give it till 16:30." */
+export function movedRungText({ names, step, before, after }: MovedRung, clock: Clock): string {
+  const as = (rung: MovedRung['after']) => ({ ...rung, milestone: rung.name })
+  return `${groupNames(names)}${step === '' ? '' : `, ${lowerFirst(step)}`}. ${effectText(as(after), as(before), clock)}`
 }

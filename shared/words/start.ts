@@ -46,6 +46,7 @@ export const startWords = {
   cautions: 'Before you begin',
   sprayArea: 'Solvent goes on in this schedule: phones stay out of the spray area.',
   submit: 'Start the batch',
+  showFirst: 'Go to its first step',
   wantWhen: 'Give a day and a time for the start.',
   wantDue: 'Give the day as well as the time it is due.',
   wantOrder: 'Give the order a name, or leave its date empty.',
