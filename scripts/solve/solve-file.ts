@@ -1,5 +1,6 @@
 import { extname } from 'node:path'
 import { performance } from 'node:perf_hooks'
+import { check } from '#shared/planning/check'
 import { startsOf } from '#shared/planning/types'
 import type { ConflictKind, Plan, PlanProblem } from '#shared/planning/types'
 import { solve } from '../../server/planner/solve'
@@ -9,11 +10,12 @@ export interface SolveLimits { seconds: number | null, schedules: number | null,
 /** Reasons that hold for any plan, not only for those looked at. */
 const proofs: ReadonlySet<ConflictKind> = new Set(['too much', 'no open time', 'window closed', 'cycle'])
 
-/** Solves within the limits: so many seconds, so many schedules, or one second when neither is given. */
+/** Solves within the limits: so many seconds, so many schedules, or one second when neither is given. A plan that the judge refuses gives way to the first. */
 export function solveWithin(problem: PlanProblem, { seconds, schedules, seed }: SolveLimits): Plan {
   const began = performance.now()
   const end = began + (seconds ?? (schedules === null ? 1 : Infinity)) * 1000
-  return solve(problem, { seed, schedules: schedules ?? Infinity, now: () => performance.now(), shouldStop: () => performance.now() >= end })
+  const plan = solve(problem, { seed, schedules: schedules ?? Infinity, now: () => performance.now(), shouldStop: () => performance.now() >= end })
+  return check(problem, plan).length === 0 ? plan : solve(problem, { seed, schedules: 1 })
 }
 
 /** What is printed of a plan: one line of JSON. `infeasible` only when that is certain, `unknown` when no plan was found. */

@@ -11,7 +11,7 @@ export type PlanAnswer = { id: number, ok: true, plan: Plan, broken: Violation[]
 
 /**
  * A search that ends when its schedules are done, its time is up or the asker has lost interest. The first plan is told at once, the best is
- * what it returns. Every plan is judged here, where it holds up nobody.
+ * what it returns; should the judge refuse that one, the first. Every plan is judged here, where it holds up nobody.
  */
 export function answer(request: PlanRequest, tell: (first: PlanAnswer) => void = () => {}): PlanAnswer {
   const { id, problem, seed, schedules, millis } = request
@@ -19,9 +19,14 @@ export function answer(request: PlanRequest, tell: (first: PlanAnswer) => void =
   const now = () => performance.now()
   const end = now() + millis
   try {
-    const judged = (plan: Plan, last: boolean): PlanAnswer => ({ id, ok: true, plan, broken: check(problem, plan), last })
-    const plan = solve(problem, { seed, schedules, now, shouldStop: () => Atomics.load(cancel, 0) !== 0 || now() >= end, onFirst: first => tell(judged(first, false)) })
-    return judged(plan, true)
+    const judged = (plan: Plan, last: boolean) => ({ id, ok: true as const, plan, broken: check(problem, plan), last })
+    let first: ReturnType<typeof judged> | null = null
+    const plan = solve(problem, { seed, schedules, now, shouldStop: () => Atomics.load(cancel, 0) !== 0 || now() >= end, onFirst: (found) => {
+      first = judged(found, false)
+      tell(first)
+    } })
+    const best = judged(plan, true)
+    return best.broken.length > 0 && first ? { ...(first as typeof best), last: true } : best
   }
   catch (error) {
     return { id, ok: false, message: error instanceof Error ? error.message : String(error) }

@@ -1,10 +1,11 @@
 import { none } from './model'
-import { Profile } from './profile'
+import { never, Profile } from './profile'
 import type { CompiledRest, Mode, Model } from './model'
-import type { Unit, UnitNode } from './units'
+import type { Seat } from './seat'
+import type { UnitNode } from './units'
 
-/** `before`: the session as it was until this unit came on to it; null for the one that opened it. */
-interface Join { readonly unit: Unit, readonly before: SessionState | null }
+/** `before`: the session as it was until this seat's unit came on to it; null for the one that opened it. */
+interface Join { readonly seat: Seat, readonly before: SessionState | null }
 interface SessionState { readonly end: number, readonly workEnd: number, readonly members: readonly number[], readonly joins: readonly Join[] }
 
 /** Work done in one go: `start` of the set-up to `end` of the clean-up, `workEnd` before it. Null: nothing is in it any more. */
@@ -35,6 +36,8 @@ export class Board {
   readonly recovered: Uint8Array
   readonly mode: (Mode | null)[]
   readonly session: (Session | null)[]
+  /** Until when what rests before an activity since before the plan has its place for sure; after that others may have taken it. */
+  readonly leaves: Int32Array
   /** Bookings since the log was last cleared, `perBooking` numbers each. */
   log = new Int32Array(1024)
   logged = 0
@@ -54,6 +57,7 @@ export class Board {
     this.end = new Int32Array(size)
     this.placed = new Uint8Array(size)
     this.recovered = new Uint8Array(size)
+    this.leaves = new Int32Array(size).fill(never)
     this.mode = Array.from({ length: size }, () => null)
     this.session = Array.from({ length: size }, () => null)
     this.layFixed()
@@ -162,8 +166,8 @@ export class Board {
   }
 
   /** Books a node where `seek` found room. Undone by `undo`, bar the activities' own times, which the next place overwrites. */
-  place(unit: Unit, node: UnitNode, spot: Spot): void {
-    const session = this.sessionFor(unit, node, spot)
+  place(seat: Seat, node: UnitNode, spot: Spot): void {
+    const session = this.sessionFor(seat, node, spot)
     const { members } = node
     for (let i = 0; i < members.length; i++) {
       const activity = members[i]!
@@ -177,7 +181,7 @@ export class Board {
     }
   }
 
-  private sessionFor(unit: Unit, node: UnitNode, spot: Spot): Session | null {
+  private sessionFor(seat: Seat, node: UnitNode, spot: Spot): Session | null {
     const workEnd = spot.start + spot.length
     const before = spot.join?.now ?? null
     const start = spot.start - node.setup
@@ -185,13 +189,13 @@ export class Board {
     if (node.family === none) return null
     const session = spot.join ?? { family: node.family, mode: spot.mode, start, workStart: spot.start, now: null }
     const last = Math.max(before?.workEnd ?? workEnd, workEnd)
-    this.alter(session, { end: last + node.cleanup, workEnd: last, members: [...before?.members ?? [], ...node.members], joins: [...before?.joins ?? [], { unit, before }] })
+    this.alter(session, { end: last + node.cleanup, workEnd: last, members: [...before?.members ?? [], ...node.members], joins: [...before?.joins ?? [], { seat, before }] })
     return session
   }
 
-  /** The session without the unit and all that came on to it afterwards. */
-  leave(session: Session, unit: Unit): void {
-    const join = session.now?.joins.find(each => each.unit === unit)
+  /** The session without the seat's unit and all that came on to it afterwards. */
+  leave(session: Session, seat: Seat): void {
+    const join = session.now?.joins.find(each => each.seat === seat)
     if (join) this.alter(session, join.before)
   }
 

@@ -16,8 +16,9 @@ const roundLength = 1000
 /** Share of changes in which the pieces are placed step by step among each other. */
 const weaving = 0.6
 
-/** Share of the cost that a change may make worse when a round begins. */
+/** What a change may make worse when a round begins: a share of the cost, but no more than a share of what changes usually cost. */
 const warmth = 0.06
+const warmthOfChange = 0.3
 
 /**
  * Makes a plan better, change by change: some pieces come off the board and are placed again, in another order, later than they could be, or
@@ -28,7 +29,11 @@ export class Improve {
   best: number
   private seats: Seat[]
   private bestSeats: Seat[]
+  /** Changes since it was last better than ever. */
+  idle = 0
   private count = 0
+  /** By how much a change for the worse makes it worse. */
+  private usual = 0
   private readonly ruin: Ruin
   private readonly floors: Floors
   private readonly regroup: Regroup | null
@@ -45,6 +50,7 @@ export class Improve {
     this.floors = new Floors(model.size, random)
     this.weave = new Weave(layout.board, this.floors, random)
     this.regroup = pieces.some(like => like.length > 1) ? new Regroup(model, pieces, random) : null
+    for (const seat of this.seats) seat.settle()
     layout.board.settle()
     layout.board.remember()
   }
@@ -53,6 +59,7 @@ export class Improve {
   step(): boolean {
     if (this.seats.length === 0) return false
     const phase = this.count++ % roundLength
+    this.idle++
     if (phase === 0 && this.cost > this.best) this.recall()
     const sooner = phase < this.seats.length && this.seats.length * 4 < roundLength
     const out = sooner ? this.earliest(phase) : this.ruin.choose(this.layout.board, this.seats)
@@ -63,7 +70,7 @@ export class Improve {
   /** The seats in turn, by when they begin: each is placed again where it can be soonest. */
   private earliest(phase: number): Seat[] {
     if (phase === 0) this.seats.sort((a, b) => a.start(0) - b.start(0))
-    return [...withLater(new Set([this.seats[phase]!]), this.seats)]
+    return [...withLater([this.seats[phase]!])]
   }
 
   private change(out: readonly Seat[], sooner: boolean, phase: number): boolean {
@@ -76,6 +83,7 @@ export class Improve {
     const done = woven || this.placeAll(into, sooner)
     const next = this.seatsWith(out, into)
     const cost = done ? this.costing.of(board, next) : Infinity
+    if (cost > this.cost && cost < Infinity) this.usual += (cost - this.cost - this.usual) * 0.02
     if (cost > this.cost + this.leniency(phase)) {
       board.undo(logged, changed)
       for (const seat of out) seat.restore(this.moved.has(seat))
@@ -103,17 +111,19 @@ export class Improve {
 
   private leniency(phase: number): number {
     const left = 1 - phase / roundLength
-    return -Math.log(this.random() + 1e-9) * warmth * left * left * this.best
+    return -Math.log(this.random() + 1e-9) * Math.min(warmth * this.best, warmthOfChange * this.usual) * left * left
   }
 
   private accept(out: readonly Seat[], next: Seat[], cost: number): boolean {
     for (const seat of out) if (this.moved.has(seat)) seat.remember()
+    for (const seat of this.moved) seat.settle()
     this.moved.clear()
     this.layout.board.settle()
     this.seats = next
     this.cost = cost
     if (cost >= this.best) return false
     this.best = cost
+    this.idle = 0
     for (const seat of this.bestSeats) seat.forget()
     for (const seat of this.seats) seat.forget()
     this.bestSeats = this.seats.slice()

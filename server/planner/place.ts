@@ -3,6 +3,7 @@ import { never } from './profile'
 import { seek } from './seek'
 import type { Board, Spot } from './board'
 import type { CompiledRest, Model } from './model'
+import type { Seat } from './seat'
 import type { Edge, Unit, UnitRest } from './units'
 
 /** Why a node found no place: an edge overrun, a resource that stays full, or (both null) no room before the horizon. */
@@ -44,7 +45,7 @@ export class Attempt {
   private readonly logged: Int32Array
   private readonly changed: Int32Array
 
-  constructor(readonly board: Board, readonly unit: Unit) {
+  constructor(readonly board: Board, readonly unit: Unit, private readonly seat: Seat) {
     const size = unit.nodes.length
     this.start = new Int32Array(size)
     this.length = new Int32Array(size)
@@ -184,7 +185,7 @@ export class Attempt {
     const [logged, changed] = [this.board.logged, this.board.changed]
     this.start[k] = spot.start
     this.length[k] = spot.length
-    this.board.place(this.unit, this.unit.nodes[k]!, spot)
+    this.board.place(this.seat, this.unit.nodes[k]!, spot)
     const step = this.restsInto(k) ?? this.restsOutOf(k)
     if (step === null) {
       this.on[k] = 1
@@ -241,7 +242,8 @@ export class Attempt {
       for (let i = 0; i < rest.members.length; i++) {
         const member = rest.members[i]!
         if (this.isFixedRest(rest)) {
-          this.board.hold(member, heldFrom(this.board.model, member), this.memberStart(k, i), 1)
+          const taken = this.stay(member, this.unit.nodes[k]!.members[i]!, this.memberStart(k, i))
+          if (taken !== null) return { kind: 'failed', cause: { node: k, edge: null, resource: taken } }
           continue
         }
         if (!this.on[rest.from]) continue
@@ -252,6 +254,17 @@ export class Attempt {
         return { kind: 'later', node: rest.from, from: full.until - this.endOffset(rest.from, i), cause }
       }
     }
+    return null
+  }
+
+  /** Keeps what rests since before the plan where it is until `start`; the resource that others have taken meanwhile, or null. */
+  private stay(rest: CompiledRest, activity: number, start: number): number | null {
+    const { board } = this
+    const sure = board.leaves[activity]!
+    for (let i = 0; i < rest.resources.length; i++) {
+      if (board.profiles[rest.resources[i]!]!.blockedUntil(sure, start, rest.amounts[i]!) !== null) return rest.resources[i]!
+    }
+    board.hold(rest, heldFrom(board.model, rest), start, 1)
     return null
   }
 

@@ -28,7 +28,7 @@ export function replay(model: Model, units: readonly Unit[], floors: Int32Array,
     if (failed.has(seat) || seat.placeNode(node).kind === 'placed') continue
     failed.add(seat)
   }
-  const off = withLater(failed, old)
+  const off = withLater(failed)
   for (const seat of off) seat.remove()
   board.settle()
   layout.seats.push(...old.filter(seat => !off.has(seat)))
@@ -47,16 +47,15 @@ function stepsOf(seat: Seat, floors: Int32Array): Next[] {
 }
 
 /** Those given, and all that came on to one of their sessions after them: they cannot stay without. */
-export function withLater(given: ReadonlySet<Seat>, all: readonly Seat[]): Set<Seat> {
+export function withLater(given: Iterable<Seat>): Set<Seat> {
   const off = new Set(given)
-  if (all.every(seat => seat.unit.nodes.every((_, node) => seat.session(node) === null))) return off
-  const seatOf = new Map(all.map(seat => [seat.unit, seat]))
   for (const seat of off) {
     for (let node = 0; node < seat.unit.nodes.length; node++) {
       const joins = seat.session(node)?.now?.joins
-      if (!joins) continue
-      const from = joins.findIndex(join => join.unit === seat.unit)
-      for (let i = from + 1; from >= 0 && i < joins.length; i++) off.add(seatOf.get(joins[i]!.unit)!)
+      if (!joins || joins.length < 2) continue
+      let from = 0
+      while (from < joins.length && joins[from]!.seat !== seat) from++
+      for (let i = from + 1; i < joins.length; i++) off.add(joins[i]!.seat)
     }
   }
   return off

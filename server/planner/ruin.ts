@@ -7,6 +7,9 @@ import type { Seat } from './seat'
 /** More than this at once is a new plan, not a change. */
 const mostSeats = 10
 
+/** Up to so many pieces all of them meet each other: more may come off, and not only neighbours. */
+const few = 24
+
 /** Chooses what comes off the board in one change: pieces at random, near each other in time, or late, with what has come on to their sessions. */
 export class Ruin {
   private readonly near: { seat: Seat, distance: number }[] = []
@@ -17,14 +20,24 @@ export class Ruin {
   /** One seat or more; empty when too much hangs together. */
   choose(board: Board, seats: readonly Seat[]): Seat[] {
     const { random } = this
-    const count = Math.min(seats.length, 1 + Math.floor(4 * random() * random() + random()))
-    const first = random() < 0.4 ? this.late(board, seats) : null
+    const count = Math.min(seats.length, 1 + Math.floor((seats.length > few ? 4 : 8) * random() * random() + random()))
+    const first = random() < 0.4 ? this.missing(seats) ?? this.late(board, seats) : null
     const seed = first ?? seats[Math.floor(random() * seats.length)]!
     const chosen = new Set([seed])
-    if (seats.length > 24 || random() < 0.5) this.addNear(seed, seats, chosen, count)
+    if (seats.length > few || random() < 0.5) this.addNear(seed, seats, chosen, count)
     for (let tries = 0; chosen.size < count && tries < 8; tries++) chosen.add(seats[Math.floor(random() * seats.length)]!)
-    const all = withLater(chosen, seats)
+    const all = withLater(chosen)
     return all.size > mostSeats ? [] : [...all]
+  }
+
+  /** One that misses a window. */
+  private missing(seats: readonly Seat[]): Seat | null {
+    const from = Math.floor(this.random() * seats.length)
+    for (let i = 0; i < seats.length; i++) {
+      const seat = seats[(from + i) % seats.length]!
+      if (seat.penalty > 0) return seat
+    }
+    return null
   }
 
   private late(board: Board, seats: readonly Seat[]): Seat | null {

@@ -67,9 +67,9 @@ export const byPrevious = (model: Model, units: readonly Unit[]): Unit[] => sort
   return { unit, key: traits.previous, second: latestStart(traits) }
 }))
 
-/** An order near the given one: a stretch of it is shaken. */
-export function shaken(units: readonly Unit[], random: () => number): Unit[] {
-  const width = Math.max(2, Math.ceil(units.length * (0.06 + 0.4 * random())))
+/** An order near the given one: a stretch of it is shaken, or all of it. */
+export function shaken(units: readonly Unit[], random: () => number, all = false): Unit[] {
+  const width = all ? units.length : Math.max(2, Math.ceil(units.length * (0.06 + 0.4 * random())))
   const from = Math.floor(random() * Math.max(1, units.length - width + 1))
   return sorted(units.map((unit, i) => ({ unit, key: i >= from && i < from + width ? i + (random() - 0.5) * width : i, second: i })))
 }

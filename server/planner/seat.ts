@@ -25,7 +25,7 @@ export class Seat {
   private kept: Record | null = null
 
   constructor(readonly board: Board, readonly unit: Unit) {
-    this.attempt = new Attempt(board, unit)
+    this.attempt = new Attempt(board, unit, this)
     this.now = emptyRecord(unit.nodes.length)
     this.before = emptyRecord(unit.nodes.length)
   }
@@ -124,7 +124,7 @@ export class Seat {
   /** Takes the unit off the board. Whoever came on to its sessions after it must be off already, or comes off with it. */
   remove(): void {
     this.free()
-    this.now.session.forEach(session => session && this.board.leave(session, this.unit))
+    this.now.session.forEach(session => session && this.board.leave(session, this))
   }
 
   /** The place before the last one is what `recall` goes back to, unless an earlier one is. */
@@ -148,6 +148,7 @@ export class Seat {
     this.kept = null
     this.board.again(this.now.bookings, this.now.count, 1)
     this.restore(false)
+    this.settle()
   }
 
   get isMoved(): boolean {
@@ -178,6 +179,16 @@ export class Seat {
 
   private recovered(node: number): boolean {
     return this.now.missed.size > 0 && this.unit.into[node]!.some(edge => this.now.missed.has(edge))
+  }
+
+  /** What rested before its work since before the plan leaves when that begins: others may count on it. */
+  settle(): void {
+    const { board, unit: { nodes, restsInto }, now } = this
+    for (let node = 0; node < nodes.length; node++) {
+      if (restsInto[node]!.length === 0 || now.dropped.has(node)) continue
+      const { members, starts } = nodes[node]!
+      for (let i = 0; i < members.length; i++) board.leaves[members[i]!] = now.start[node]! + starts[i]!
+    }
   }
 
   /** Penalties of the windows it misses between what has a place. */

@@ -56,29 +56,48 @@ function* tries(model: Model, pieces: readonly (readonly Component[])[]): Genera
 
 interface Best { layout: Layout, units: Unit[], unplaced: number, cost: number }
 
+const isBetter = (one: Omit<Best, 'layout' | 'units'>, other: Omit<Best, 'layout' | 'units'> | null) => !other || one.unplaced < other.unplaced || (one.unplaced === other.unplaced && one.cost < other.cost)
+
 /** So many plans are built by rules before the best of them is changed: fewer when each takes long or only few are asked for. */
 const triesFor = (size: number, schedules: number) => Math.max(2, Math.min(28, Math.max(4, Math.ceil(6000 / (size + 1))), Math.ceil(schedules / 3)))
 
-/** A search in steps: plans by rules, then, where everything has a start, changes to the best of them; else other orders. */
+/** After so many changes without a gain a small plan that is not the best is begun anew from another order. */
+const patience = 800
+const mostForRestarts = 120
+
+/**
+ * A search in steps: plans by rules, then, where everything has a start, changes to the best of them; else other orders. The last plan
+ * repaired is changed too, in turn with the other: what it lacks may be mended with few moves.
+ */
 class Search {
   count = 0
   best: Best | null = null
+  private repaired: Best | null = null
   private readonly given: Generator<Try>
   private readonly pieces: Component[][]
   private readonly costing: Cost
-  private improve: Improve | null = null
+  private readonly improving: Improve[] = []
 
-  constructor(private readonly model: Model, private readonly mostTries: number, private readonly random: () => number) {
+  constructor(private readonly model: Model, private readonly bound: number, private readonly mostTries: number, private readonly random: () => number) {
     this.pieces = piecesOf(model)
     this.given = tries(model, this.pieces)
     this.costing = new Cost(model)
   }
 
+  /** No plan can be better. */
+  get isPerfect(): boolean {
+    return this.best!.unplaced === 0 && this.cost <= this.bound
+  }
+
+  private get cost(): number {
+    return this.improving.reduce((least, each) => Math.min(least, each.best), this.best!.cost)
+  }
+
   /** One more plan built or changed. False when stopped before it was done. */
   step(shouldStop: () => boolean): boolean {
     this.count++
-    if (this.improve) {
-      if (this.improve.step()) this.best!.cost = this.improve.best
+    if (this.improving.length > 0) {
+      this.improve(this.count % this.improving.length, shouldStop)
       return true
     }
     const next: IteratorResult<Try> = this.count > this.mostTries ? { done: true, value: null } : this.given.next()
@@ -89,21 +108,39 @@ class Search {
     return layout !== null
   }
 
+  private improve(i: number, shouldStop: () => boolean): void {
+    const each = this.improving[i]!
+    each.step()
+    if (each.idle < patience || this.model.size > mostForRestarts) return
+    const better = this.improving.findIndex((other, k) => k !== i && other.best <= each.best)
+    if (better < 0) return
+    const layout = construct(this.model, shaken(this.best!.units, this.random, true), null, shouldStop)
+    if (layout && layout.board.placed.every(placed => placed === 1)) this.improving[i] = new Improve(this.model, layout, this.costing, this.pieces, this.random)
+    else each.idle = 0
+  }
+
   private begin(): boolean {
-    this.improve = new Improve(this.model, this.best!.layout, this.costing, this.pieces, this.random)
+    const from = [this.best!]
+    if (this.repaired && this.repaired !== this.best && this.repaired.unplaced === 0) from.push(this.repaired)
+    if (from.length < 2 && this.model.size <= mostForRestarts) {
+      const layout = construct(this.model, shaken(this.best!.units, this.random), null, () => false)
+      if (layout && layout.board.placed.every(placed => placed === 1)) from.push({ ...this.best!, layout })
+    }
+    for (const { layout } of from) this.improving.push(new Improve(this.model, layout, this.costing, this.pieces, this.random))
     return true
   }
 
   private keep(layout: Layout, units: Unit[]): void {
-    const { best } = this
     const unplaced = layout.board.placed.reduce((sum, placed) => sum + 1 - placed, 0)
-    const cost = this.costing.of(layout.board, layout.seats)
-    if (!best || unplaced < best.unplaced || (unplaced === best.unplaced && cost < best.cost)) this.best = { layout, units, unplaced, cost }
+    const found = { layout, units, unplaced, cost: this.costing.of(layout.board, layout.seats) }
+    if (this.count === 1 && Object.keys(this.model.problem.previous).length > 0) this.repaired = found
+    if (isBetter(found, this.best)) this.best = found
   }
 
   /** The best layout there is. */
   finish(): Layout {
-    return this.improve?.finish() ?? this.best!.layout
+    const best = this.improving.reduce<Improve | null>((least, each) => (least && least.best <= each.best ? least : each), null)
+    return best?.finish() ?? this.best!.layout
   }
 }
 
@@ -118,12 +155,12 @@ export function solve(problem: PlanProblem, options: SolveOptions = {}): Plan {
   const bound = lowerBound(model)
   const project = planProject(problem, { seed, schedules, shouldStop, now, bound })
   if (project) return project
-  const search = new Search(model, triesFor(model.size, schedules), randomFrom(seed))
+  const search = new Search(model, bound, triesFor(model.size, schedules), randomFrom(seed))
   const planOf = (layout: Layout) => makePlan(problem, { ...draftOf(layout), bound, seed, schedules: search.count, elapsed: Math.max(0, now() - began) })
   search.step(() => false)
   if (options.onFirst) options.onFirst(planOf(search.best!.layout))
   const fixed = model.isFixed.every(each => each === 1)
-  while (!fixed && search.count < schedules && !(search.best!.unplaced === 0 && search.best!.cost <= bound) && !shouldStop()) {
+  while (!fixed && search.count < schedules && !search.isPerfect && !shouldStop()) {
     if (!search.step(shouldStop)) break
   }
   return planOf(search.finish())
