@@ -25,7 +25,7 @@ const frame = (title: string, inside: readonly string[]) => `<svg xmlns="http://
 export function earlyPicture(cells: readonly Cell[], worlds: readonly World[]): string {
   const x = (i: number) => left + 40 + i * 96
   const y = (share: number) => bottom - share * 1200
-  const inside = [`<rect x="${left}" y="${y(0.13)}" width="${width - left - 20}" height="${y(0.07) - y(0.13)}" fill="#d8dfd3"/>`, text(width - 24, y(0.128) + 10, 'bar 7 to 13 %', 'end')]
+  const inside = [`<rect x="${left}" y="${y(0.13)}" width="${width - left - 20}" height="${y(0.07) - y(0.13)}" fill="#d8dfd3"/>`, text(width - 24, y(0.075), 'bar 7 to 13 %', 'end')]
   for (const share of [0, 0.05, 0.1, 0.15]) inside.push(text(left - 8, y(share) + 4, `${share * 100} %`, 'end'))
   for (const [i, coats] of checkpoints.entries()) inside.push(text(x(i), bottom + 20, String(coats), 'middle'))
   inside.push(text(width / 2, height - 6, 'coats of this bench, each rung tested once a coat by somebody who happened by', 'middle'))
