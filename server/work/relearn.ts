@@ -23,7 +23,8 @@ interface TestRow { test: typeof touchTest.$inferSelect, coat: CoatRow }
 export function relearn(tx: Transaction, studioId: number, pieceIds: readonly number[] | null, now: number): number[] {
   const versions = tx.selectDistinct({ id: coat.materialVersionId }).from(coat).innerJoin(touchTest, eq(touchTest.coatId, coat.id))
     .where(and(scoped(coat, studioId, isNotNull(coat.materialVersionId)), pieceIds ? inArray(coat.pieceId, [...pieceIds]) : undefined)).all()
-  const taught = tx.select({ id: benchSpeed.materialVersionId }).from(benchSpeed).innerJoin(coat, eq(coat.materialVersionId, benchSpeed.materialVersionId))
+  // A coat that was taken back has no row any more: with the whole studio its edition is found by what it had taught.
+  const taught = tx.selectDistinct({ id: benchSpeed.materialVersionId }).from(benchSpeed).leftJoin(coat, eq(coat.materialVersionId, benchSpeed.materialVersionId))
     .where(and(scoped(benchSpeed, studioId), pieceIds ? inArray(coat.pieceId, [...pieceIds]) : undefined)).all()
   const ids = [...new Set([...versions, ...taught].flatMap(row => row.id ?? []))]
   return ids.filter(id => relearnOne(tx, studioId, id, now))
