@@ -13,6 +13,7 @@ import { groupMoment } from '#shared/verdict/next'
 import { momentText } from '#shared/words/moments'
 import { actText } from '#shared/words/steps'
 import type { ToldLine } from '~/stores/told'
+import type { Told } from '~/stores/untold'
 
 type Studio = Awaited<ReturnType<typeof useStudio>>
 
@@ -51,13 +52,33 @@ function lateTaps(told: ReturnType<typeof useToldStore>) {
 }
 
 /** The question that came in place of an answer: solvent work wants three things said first. */
-const questionIn = (current: unknown): VapourAsked | null => (typeof current === 'object' && current !== null && 'ask' in current && current.ask === 'vapour' ? current as VapourAsked : null)
+function questionIn(answer: Told): VapourAsked | null {
+  const current = answer.outcome === 'refused' ? answer.current : null
+  return typeof current === 'object' && current !== null && 'ask' in current && current.ask === 'vapour' ? current as VapourAsked : null
+}
+
+/** What a line on the page keeps of a telling, whatever came of it. */
+const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
+
+/** Solvent work that waits for its three answers: nothing of it is recorded before. */
+function waitingWork() {
+  const asked = shallowRef<{ telling: Telling, what: VapourAsked }[]>([])
+  function wait(telling: Telling, what: VapourAsked) {
+    asked.value = [...asked.value, { telling, what }]
+    return null
+  }
+  function takeWaiting() {
+    const waiting = asked.value
+    asked.value = []
+    return waiting
+  }
+  return { asked, wait, takeWaiting }
+}
 
 function makeTelling(studio: Studio) {
   const { tell, correct, busy } = useActs()
   const told = useToldStore()
   const current = (ids: readonly number[]) => (studio.state.value?.pieces ?? []).filter(piece => ids.includes(piece.id))
-
   const effectNow = (line: EffectOf & Pick<ToldLine, 'pieceIds'>) => effectOfAct(current(line.pieceIds), line)
 
   /** What the times say now, beside what they said before; or the next moment where no time is at stake. */
@@ -68,34 +89,24 @@ function makeTelling(studio: Studio) {
     return { effect: next ? toldWords.next(momentText(next, studio.clock.value)) : '', now: null }
   }
 
-  /** Solvent work that waits for its three answers: nothing of it is recorded before. */
-  const asked = shallowRef<{ telling: Telling, what: VapourAsked }[]>([])
-
+  const { asked, wait, takeWaiting } = waitingWork()
   async function say(telling: Telling, vapour?: VapourAnswers) {
-    const pieceIds = telling.pieces.map(piece => piece.id)
-    const base = { kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds, step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt }
+    const base = baseOf(telling)
     const before = wets(telling.kind) ? null : effectNow({ ...base, rootId: null })
     const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds, vapour)
     const blank = { ...base, clientKey: null, actId: null, rootId: null, effect: '', before, problem: null }
     if (answer.outcome === 'later') return told.add({ ...blank, state: 'later', clientKey: answer.clientKey })
-    const question = answer.outcome === 'refused' ? questionIn(answer.current) : null
-    if (question) {
-      asked.value = [...asked.value, { telling, what: question }]
-      return null
-    }
+    const question = questionIn(answer)
+    if (question) return wait(telling, question)
     if (answer.outcome === 'refused') return told.add({ ...blank, state: 'refused', problem: Object.values(answer.fields)[0] ?? answer.message })
-    const line = { ...blank, state: 'told' as const, actId: answer.actId, rootId: answer.actId }
-    const { effect, now } = describe(line)
-    return told.add({ ...line, effect, before: now })
+    const { effect, now } = describe({ ...blank, rootId: answer.actId })
+    return told.add({ ...blank, state: 'told', actId: answer.actId, rootId: answer.actId, effect, before: now })
   }
 
   /** The three answers, for everything that waits for them. */
   async function answer(vapour: VapourAnswers) {
-    const waiting = asked.value
-    asked.value = []
-    for (const { telling } of waiting) await say({ ...telling, pieces: current(telling.pieces.map(piece => piece.id)) }, vapour)
+    for (const { telling } of takeWaiting()) await say({ ...telling, pieces: current(telling.pieces.map(piece => piece.id)) }, vapour)
   }
-  const leave = () => { asked.value = [] }
 
   async function amend(line: ToldLine, change: { doneAt?: number, takeBack?: boolean }) {
     if (line.actId === null || busy.value) return
@@ -121,7 +132,7 @@ function makeTelling(studio: Studio) {
     await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material })
   }
 
-  return { say, again, dropLater: lateTaps(told), busy, told, asked, answer, leave, undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
+  return { say, again, dropLater: lateTaps(told), busy, told, asked, answer, leave: () => void takeWaiting(), undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
 }
 
 type TellingOnPage = ReturnType<typeof makeTelling> & { studio: Studio }

@@ -1,5 +1,5 @@
 import { desc, eq, isNull } from 'drizzle-orm'
-import { act, keepOut, room } from '~~/db/schema'
+import { act, keepOut, room, vapourStart } from '~~/db/schema'
 import { memberNames } from '~~/server/services/member-names'
 import type { Membership } from '~~/server/services/sessions'
 import { end } from '~~/server/services/vapour-starts'
@@ -48,6 +48,8 @@ export function shutAgain(db: Database, studioId: number, who: Membership, roomI
     const opening = tx.select().from(act).where(owned(act, studioId, last.openedActId)).get()
     if (!opening) return absent()
     insertAct(tx, studioId, { clientKey: `shut room ${last.id} ${now}`, kind: 'room opened', doneAt: now, toldAt: now, acting: { actor: 'member', memberId: who.id }, body: opening.body, subjects: [], replaces: { id: opening.id, rootId: opening.rootActId ?? opening.id }, voided: true })
+    // The work that the opening ended goes on as it was said to, its exhaust too.
+    tx.update(vapourStart).set({ endedAt: null }).where(scoped(vapourStart, studioId, eq(vapourStart.roomId, roomId), eq(vapourStart.endedAt, last.openedAt), eq(vapourStart.exhaust, 'running'))).run()
     tx.update(keepOut).set({ openedActId: null, openedAt: null }).where(owned(keepOut, studioId, last.id)).run()
     return { ok: true }
   })

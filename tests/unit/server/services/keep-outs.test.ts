@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { act, keepOut } from '~~/db/schema'
+import { act, keepOut, vapourStart } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { openRoom, shutAgain } from '~~/server/services/keep-outs'
@@ -58,7 +58,9 @@ describe('taking an opening back', () => {
   it('shuts the room as if it had not been opened, by anybody, and keeps both acts', () => {
     const { db, studioId, members, rooms } = withShutRoom()
     openRoom(db, studioId, members.maker, rooms.spray, now)
+    expect(db.select().from(vapourStart).get()?.endedAt).toBe(now)
     expect(shutAgain(db, studioId, members.helper, rooms.spray, now + minute)).toEqual({ ok: true })
+    expect(db.select().from(vapourStart).get()?.endedAt).toBeNull()
     expect(roomStates(db, studioId, now + minute).find(room => room.id === rooms.spray)?.keepOut).toMatchObject({ sinceAt: now - 10 * minute, opensBy: 'The maker' })
     const opened = db.select().from(act).all().filter(row => row.kind === 'room opened')
     expect(opened.map(row => [row.memberId, row.voided])).toEqual([[members.maker.id, false], [members.helper.id, true]])
