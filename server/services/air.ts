@@ -1,16 +1,13 @@
 import { roomStates } from '~~/server/services/room-states'
+import { listImports } from '~~/server/services/reading-imports'
 import { listReadings } from '~~/server/services/readings'
 import type { Database } from '~~/server/utils/database'
-import { equilibriumMoisture } from '#shared/air/equilibrium'
 import { dewPoint } from '#shared/air/psychrometrics'
+import { boardMoisture, sheetAir } from '#shared/air-course'
 import { driverRate } from '#shared/drying/rates'
 import { filmDrivers } from '#shared/schemas/air'
 import type { RoomAirState } from '#shared/schemas/air'
 
-/** The climate most sheets give their times for, Celsius and a share. */
-const sheetAir = { tempC: 20, rh: 0.5 }
-/** Below this the published equation for wood does not speak. */
-const coldestBoard = -5
 const notesShown = 8
 
 /** Every room's air at `now` (ms UTC), with what it means for films and for board. */
@@ -21,9 +18,11 @@ export function airNow(db: Database, studioId: number, now: number): RoomAirStat
     return [{
       roomId: id, name, outdoor, heated, tempC, rh, readAt, assumed,
       dewPointC: rh > 0 ? dewPoint(tempC, rh) : null,
-      boardMoisture: tempC >= coldestBoard ? equilibriumMoisture(tempC, rh) : null,
+      boardMoisture: boardMoisture({ tempC, rh }),
       speeds: filmDrivers.map(driver => ({ driver, factor: driverRate(driver, { tempC, rh }, sheetAir) })),
-      notes: listReadings(db, studioId, id, notesShown).map(({ doubt: _doubt, ...note }) => note),
+      notes: listReadings(db, studioId, id, notesShown, 'told').map(({ doubt: _doubt, ...note }) => note),
+      last: listReadings(db, studioId, id, 1).map(({ doubt: _doubt, ...note }) => note)[0] ?? null,
+      imports: listImports(db, studioId, id),
     }]
   })
 }

@@ -1,3 +1,4 @@
+import type { ImportState } from '#shared/schemas/reading-import'
 import type { Driver, ReadingSource } from '#shared/terms'
 
 /** Kinds of film by what they dry by, each against a sheet that speaks of 20 °C and 50 % humidity. */
@@ -24,6 +25,21 @@ export interface RoomAirState {
   boardMoisture: number | null
   /** Drying speed by kind of film: 0.41 takes 1/0.41 as long as the sheet says. */
   speeds: { driver: FilmDriver, factor: number }[]
-  /** The newest first. */
+  /** The newest first; what came with a file is under `imports`. */
   notes: NoteState[]
+  /** The newest reading of any kind. */
+  last: NoteState | null
+  imports: ImportState[]
 }
+
+export const courseSpanNames = ['day', 'week', 'month'] as const
+export type CourseSpan = typeof courseSpanNames[number]
+
+/**
+ * A room's air at an instant. `speeds` in the order of `filmDrivers`, 1 as fast as the sheet; `boardMoisture` per cent of the dry weight.
+ * `reckoned` after the last reading: nobody measured it.
+ */
+export interface CoursePoint { at: number, tempC: number, rh: number, dewPointC: number, boardMoisture: number | null, speeds: number[], reckoned: boolean }
+
+/** How a room's air went, ms UTC. No points before its first reading. */
+export interface RoomCourse { roomId: number, fromAt: number, toAt: number, points: CoursePoint[] }

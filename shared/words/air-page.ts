@@ -1,4 +1,4 @@
-import type { FilmDriver, RoomAirState } from '#shared/schemas/air'
+import type { CoursePoint, FilmDriver, RoomAirState } from '#shared/schemas/air'
 import type { MovedRung } from '#shared/moved'
 import type { ReadingSource } from '#shared/terms'
 import { ago, span } from '#shared/time'
@@ -38,8 +38,25 @@ export const airWords = {
   boardCold: 'too cold to say',
   outdoor: 'outdoors',
   unheated: 'not heated',
-  speeds: 'How fast films dry now',
+  speeds: (when: string | null) => when === null ? 'How fast films dry now' : `How fast films dried: ${when}`,
   speedsHint: 'Drying speed is against a sheet that speaks of 20 °C and 50 % humidity; each film goes by its own sheet on the board.',
+  span: 'Show',
+  spans: { day: 'a day', week: 'a week', month: 'a month' },
+  spanNames: { day: 'the last day', week: 'the last week', month: 'the last month' },
+  courseWaiting: 'Fetching how the air went',
+  courseFailed: 'How the air went could not be fetched.',
+  courseEmpty: 'Nothing was read here in this time.',
+  warmth: 'Temperature and dew point',
+  warmthLine: 'temperature',
+  dewLine: 'dew point',
+  sheetLine: 'Dotted: as fast as the sheet says.',
+  reckonedLine: 'Dashed: reckoned on, nobody read it.',
+  lookAlong: (room: string, span: string) => `Look along ${span}: ${room}`,
+  nowPoint: 'Now',
+  reckonedPoint: 'reckoned on',
+  figures: 'Figures as a table',
+  figuresOf: (room: string, span: string) => `Air of ${room}, ${span}`,
+  time: 'Time',
   list: 'Last notes',
   undo: 'Take it back',
   bySensor: 'a sensor',
@@ -84,4 +101,10 @@ export function movedText(count: number, mostMs: number): string {
 export function movedRungText({ names, step, before, after }: MovedRung, clock: Clock): string {
   const as = (rung: MovedRung['after']) => ({ ...rung, milestone: rung.name })
   return `${groupNames(names)}${step === '' ? '' : `, ${lowerFirst(step)}`}. ${effectText(as(after), as(before), clock)}`
+}
+
+/** "Tue 14:00: 19.4 °C, 61 %, dew point 11.8 °C, board and wood at 10.9 %." A point of a chart read out. */
+export function coursePointText(point: CoursePoint, when: string, units: Units): string {
+  const board = point.boardMoisture === null ? '' : `, board and wood settle at ${point.boardMoisture.toFixed(1)} %`
+  return `${when}: ${temperatureText(point.tempC, units)}, ${humidityText(point.rh)}, dew point ${temperatureText(point.dewPointC, units)}${board}${point.reckoned ? `, ${airWords.reckonedPoint}` : ''}`
 }

@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, subscription: number, material: number, invitationToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, subscription: number, material: number, invitationToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -61,6 +61,8 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const seen = await owner.post<{ actId: number }>('/api/acts', { clientKey: 'access-first-act', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece, version: versionOf(databaseFile, piece) }], body: {} })
   if (seen.status !== 200) throw new Error(`The act was answered with ${seen.status}: ${JSON.stringify(seen.body)}`)
   const reading = await made(owner, `/api/rooms/${room.id}/readings`, { clientKey: 'access-reading', at: now(), tempC: 19, rh: 0.5, words: null })
+  const imported = await owner.post<{ importId: number }>(`/api/rooms/${room.id}/imports`, { clientKey: 'access-import', fileName: `${marker}.csv`, times: [Date.now() - 7_200_000], temps: [18], humidities: [0.5] })
+  if (imported.status !== 200) throw new Error(`The file was answered with ${imported.status}: ${JSON.stringify(imported.body)}`)
   const subscription = await made(owner, '/api/push/subscriptions', pushSubscription(marker))
   const [schedule] = (await owner.get<{ id: number }[]>('/api/schedules')).body
   if (!schedule) throw new Error('The first studio has no finishing schedule.')
@@ -68,7 +70,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   if (!material) throw new Error('The first studio has no material.')
   const calls = writeCalls(databaseFile, room.id, seen.body.actId, piece)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */

@@ -1,0 +1,29 @@
+import { eq } from 'drizzle-orm'
+import { studio } from '~~/db/schema'
+import type { Database } from '~~/server/utils/database'
+import { roomAirs } from '~~/server/work/air'
+import { preparedMaterials } from '~~/server/work/materials'
+import { offsetAt } from '#shared/air/zone'
+import { airCourse, courseTimes } from '#shared/air-course'
+import { trackRoom } from '#shared/drying/tools'
+import type { CourseSpan, RoomCourse } from '#shared/schemas/air'
+
+/** Figures to a hundredth: what no chart or table shows need not travel. */
+const rounded = (value: number) => Math.round(value * 100) / 100
+const toFour = (value: number) => Math.round(value * 10_000) / 10_000
+
+/** How the air of every room went up to `now` (ms UTC). */
+export function airCourses(db: Database, studioId: number, span: CourseSpan, now: number): RoomCourse[] {
+  const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
+  if (!owner) return []
+  const { tools } = preparedMaterials
+  return [...roomAirs(db, owner, courseTimes(span, now, 0)[0] ?? now)].map(([roomId, air]): RoomCourse => {
+    const track = trackRoom(tools, air, now)
+    const times = courseTimes(span, now, offsetAt(track.zone, now))
+    const points = airCourse(track, times, tools).map(point => ({
+      ...point, tempC: rounded(point.tempC), rh: toFour(point.rh), dewPointC: rounded(point.dewPointC),
+      boardMoisture: point.boardMoisture === null ? null : rounded(point.boardMoisture), speeds: point.speeds.map(rounded),
+    }))
+    return { roomId, fromAt: times[0] ?? now, toAt: now, points }
+  })
+}
