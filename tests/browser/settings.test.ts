@@ -160,7 +160,7 @@ describe('who sees what', () => {
 describe('everybody who can see or not', () => {
   it.each(['light', 'dark'] as const)('finds nothing in the way in the %s scheme', async (colorScheme) => {
     const { page, problems } = await openPage(browser, server.origin, { colorScheme }, owner)
-    const paths = ['/air', '/week', '/materials', `/materials/${material}`, '/schedules', `/schedules/${schedule}`, '/settings', '/settings/studio', '/settings/rooms', '/settings/hours', '/settings/people', '/settings/walls', '/settings/calls', '/settings/installation']
+    const paths = ['/air', '/air/file', '/week', '/materials', `/materials/${material}`, '/schedules', `/schedules/${schedule}`, '/settings', '/settings/studio', '/settings/rooms', '/settings/hours', '/settings/people', '/settings/walls', '/settings/calls', '/settings/installation']
     for (const path of paths) expect(await axe(page, path)).toEqual([])
     expect(problems).toEqual([])
   }, 120_000)

@@ -9,7 +9,7 @@ const point = (time: number, tempC: number, reckoned = false): CoursePoint => ({
 describe('a scale', () => {
   it('takes whole steps around its values', () => {
     expect(scaleOf([16.2, 21.7], 4)).toEqual({ low: 16, high: 22, ticks: [16, 18, 20, 22] })
-    expect(scaleOf([42, 68], 20)).toEqual({ low: 40, high: 80, ticks: [40, 60, 80] })
+    expect(scaleOf([42, 68], 20)).toEqual({ low: 40, high: 70, ticks: [40, 50, 60, 70] })
   })
   it('does not make a storm of a still room', () => {
     // 19 and 19.2 alone would be stretched over the whole height; the least of 4 gives 17.1 to 21.1.
