@@ -1,3 +1,4 @@
+import type { ParseResult, Parser } from 'papaparse'
 import type { Delimiter } from '#shared/logger-file/types'
 
 /** Characters at a time: some milliseconds of work, so that the page goes on answering. */
@@ -14,7 +15,7 @@ export async function splitRows(text: string, delimiter: Delimiter, onShare: (sh
   await new Promise<void>((resolve, reject) => {
     papa.parse<string[]>(text, {
       delimiter, chunkSize,
-      chunk: ({ data, meta }, parser) => {
+      chunk: ({ data, meta }: ParseResult<string[]>, parser: Parser) => {
         for (const row of data) rows.push(row)
         onShare(Math.min(1, meta.cursor / Math.max(1, text.length)))
         parser.pause()

@@ -10,12 +10,12 @@ export interface Scale { low: number, high: number, ticks: number[] }
 
 const steps = [0.5, 1, 2, 5, 10, 20, 25, 50]
 
-/** A scale of whole steps around some values, with two to four lines. `least` is the least it spans, so that a still room does not look stormy. */
+/** A scale of whole steps around some values, with two to five lines. `least` is the least it spans, so that a still room does not look stormy. */
 export function scaleOf(values: readonly number[], least: number): Scale {
   const [bottom, top] = values.length === 0 ? [0, least] : [Math.min(...values), Math.max(...values)]
   const spare = Math.max(0, least - (top - bottom)) / 2
   const [from, to] = [bottom - spare, top + spare]
-  const step = steps.find(each => Math.ceil(to / each) - Math.floor(from / each) <= 3) ?? 100
+  const step = steps.find(each => Math.ceil(to / each) - Math.floor(from / each) <= 4) ?? 100
   const [low, high] = [Math.floor(from / step) * step, Math.ceil(to / step) * step]
   return { low, high, ticks: Array.from({ length: Math.round((high - low) / step) + 1 }, (_, i) => low + i * step) }
 }

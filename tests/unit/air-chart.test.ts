@@ -14,7 +14,7 @@ describe('a scale', () => {
   it('does not make a storm of a still room', () => {
     // 19 and 19.2 alone would be stretched over the whole height; the least of 4 gives 17.1 to 21.1.
     expect(scaleOf([19, 19.2], 4)).toEqual({ low: 16, high: 22, ticks: [16, 18, 20, 22] })
-    expect(scaleOf([], 4)).toEqual({ low: 0, high: 4, ticks: [0, 2, 4] })
+    expect(scaleOf([], 4)).toEqual({ low: 0, high: 4, ticks: [0, 1, 2, 3, 4] })
   })
   it('keeps what is beyond it at its edge', () => expect([heightAt({ low: 0, high: 2 }, 3), heightAt({ low: 0, high: 2 }, 1), heightAt({ low: 0, high: 2 }, -1)]).toEqual([0, 50, 100]))
 })

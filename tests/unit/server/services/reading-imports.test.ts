@@ -87,7 +87,7 @@ describe('taking a file back', () => {
 describe('films', () => {
   it('are foretold anew by a file, and as before once it is taken back', () => {
     const of = made()
-    const batch = startBatch(of.db, of.studioId, { member: of.members.maker }, { clientKey: 'batch-key-1', name: 'Boxes', scheduleId: null, pieces: ['Box 1'], placeId: of.places.shelf, order: null, startsAt: new Date(now - 3 * hour).toISOString() }, now)
+    const batch = startBatch(of.db, of.studioId, { member: of.members.maker }, { clientKey: 'batch-key-1', name: 'Boxes', scheduleId: null, pieces: ['Box 1'], sizeUnits: 1, oldObject: false, placeId: of.places.shelf, order: null, startsAt: new Date(now - 3 * hour).toISOString() }, now)
     if (!batch.ok) throw new Error(batch.message)
     const on = recordAct(of.db, of.studioId, { member: of.members.maker }, { clientKey: 'coat-key-1', kind: 'coat on', doneAt: new Date(now - 2 * hour).toISOString(), pieces: pieceStates(of.db, of.studioId, batch.pieceIds).map(({ id, version }) => ({ id, version })), body: { step: null, materialVersionId: of.materialOf('acrylic-gesso') } }, now)
     if (!on.ok) throw new Error(on.message)
