@@ -6,7 +6,8 @@ export interface Found { starts: Int32Array, makespan: number, schedules: number
 
 interface Member { starts: Int32Array, makespan: number }
 
-const population = 16
+/** How many plans are kept side by side: fewer when there is little time to better them. */
+const populationFor = (schedules: number) => (schedules <= 10_000 ? 8 : 16)
 
 /** Restart with the better half kept after so many children for each member without a gain. */
 const patience = 60
@@ -18,9 +19,11 @@ class OrderSearch {
   private members: Member[] = []
   private best: Member
   private idle = 0
+  private readonly population: number
 
   constructor(private readonly project: Project, private readonly limits: SearchLimits) {
     this.serial = new Serial(project)
+    this.population = populationFor(limits.schedules)
     this.keys = new Float64Array(project.size)
     this.trial = new Int32Array(project.size)
     this.best = { starts: new Int32Array(project.size), makespan: Infinity }
@@ -29,7 +32,7 @@ class OrderSearch {
   run(): Found {
     const tails = latestStarts(this.project)
     this.seed(0, tails)
-    for (let k = 1; k < population && !this.done(); k++) this.seed(k, tails)
+    for (let k = 1; k < this.population && !this.done(); k++) this.seed(k, tails)
     while (!this.done()) this.step(tails)
     return { ...this.best, schedules: this.serial.schedules }
   }
@@ -59,7 +62,7 @@ class OrderSearch {
 
   private step(tails: Int32Array): void {
     const { random } = this.limits
-    if (++this.idle > patience * population) return this.restart(tails)
+    if (++this.idle > patience * this.population) return this.restart(tails)
     const parent = this.members[Math.floor(random() * this.members.length)]!
     const second = this.members[Math.floor(random() * this.members.length)]!
     if (random() < 0.7 || parent === second) this.shake(parent)
@@ -97,8 +100,8 @@ class OrderSearch {
   private restart(tails: Int32Array): void {
     this.idle = 0
     this.members.sort((a, b) => a.makespan - b.makespan)
-    const keep = this.limits.random() < 0.5 ? population / 2 : 0
-    for (let k = keep; k < population && !this.done(); k++) this.seed(k, tails)
+    const keep = this.limits.random() < 0.5 ? this.population / 2 : 0
+    for (let k = keep; k < this.population && !this.done(); k++) this.seed(k, tails)
   }
 }
 
