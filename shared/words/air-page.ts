@@ -1,5 +1,6 @@
 import type { CoursePoint, FilmDriver, RoomAirState } from '#shared/schemas/air'
 import type { MovedRung } from '#shared/moved'
+import { milestoneNames } from '#shared/terms'
 import type { ReadingSource } from '#shared/terms'
 import { ago, span } from '#shared/time'
 import type { Clock } from '#shared/time'
@@ -99,7 +100,7 @@ export function movedText(count: number, mostMs: number): string {
 
 /** "Tide boxes 1–4, first paint. Ready to recoat: likely 16:20, give it till 17:05. It was likely 15:50, give it till 16:30." */
 export function movedRungText({ names, step, before, after }: MovedRung, clock: Clock): string {
-  const as = (rung: MovedRung['after']) => ({ ...rung, milestone: rung.name })
+  const as = (rung: MovedRung['after']) => ({ ...rung, milestone: milestoneNames.find(name => name === rung.name) ?? 'cured' as const })
   return `${groupNames(names)}${step === '' ? '' : `, ${lowerFirst(step)}`}. ${effectText(as(after), as(before), clock)}`
 }
 
