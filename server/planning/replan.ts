@@ -26,8 +26,11 @@ export const atOnce: Solver = (_key, problem) => {
 
 const inWorker: Solver = (key, problem, onFirst) => usePlanRunner().run(key, problem, { onFirst })
 
-/** `stale`: the studio changed while it was being planned, and a newer plan is on its way. */
-export type Replanned = { ok: true, planned: number } | { ok: false, reason: 'stale' | 'no studio' | 'not solved' | 'not legal', message: string }
+/**
+ * `superseded`: a newer problem of this studio is being solved already. `stale`: the studio changed while it was being
+ * planned, and what stands now is to be planned.
+ */
+export type Replanned = { ok: true, planned: number } | { ok: false, reason: 'superseded' | 'stale' | 'no studio' | 'not solved' | 'not legal', message: string }
 
 /**
  * Plans a studio anew: windows that shut unused first get their recovery, then every open turn gets a start, then the
@@ -49,7 +52,7 @@ export async function replan(db: Database, studioId: number, now: number, solver
   const solved = await solver(String(studioId), given.problem, (first, broken) => {
     if (facts.last.length === 0 && broken.length === 0) store(first)
   })
-  if (!solved.ok) return { ok: false, reason: solved.reason === 'superseded' ? 'stale' : 'not solved', message: solved.message }
+  if (!solved.ok) return { ok: false, reason: solved.reason === 'superseded' ? 'superseded' : 'not solved', message: solved.message }
   const { plan, broken } = solved
   if (broken.length > 0) return { ok: false, reason: 'not legal', message: `The plan of studio ${studioId} breaks ${broken.length} rules: ${JSON.stringify(broken.slice(0, 3))}` }
   if (!store(plan)) return { ok: false, reason: 'stale', message: 'The studio changed meanwhile.' }

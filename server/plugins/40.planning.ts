@@ -29,9 +29,11 @@ function planSoon(studioId: number) {
 async function planNow(studioId: number) {
   try {
     const done = await replan(useDatabase(), studioId, Date.now())
-    // Something else was committed while it was being planned: plan what stands now.
-    if (!done.ok && done.reason === 'stale') planSoon(studioId)
-    if (!done.ok && done.reason !== 'stale' && done.reason !== 'no studio') console.error(`The plan of studio ${studioId} was not made. ${done.message}`)
+    if (done.ok || done.reason === 'superseded' || done.reason === 'no studio') return
+    // Something else was committed while it was being planned: plan what stands now. To do so for a superseded one would
+    // end the newer search that superseded it, and so on for ever.
+    if (done.reason === 'stale') planSoon(studioId)
+    else console.error(`The plan of studio ${studioId} was not made. ${done.message}`)
   }
   catch (error) {
     console.error(`The plan of studio ${studioId} was not made.`, error)
