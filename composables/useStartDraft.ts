@@ -31,7 +31,8 @@ const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', co
 export function stemOf(batchName: string): string {
   const name = batchName.trim()
   const last = name.split(/\s+/).at(-1) ?? ''
-  const one = last.length > 3 && last.endsWith('s') && !last.endsWith('ss') ? name.slice(0, -1) : name
+  const ending = /(?:x|ch|sh|ss)es$/.test(last) ? 2 : last.length > 3 && last.endsWith('s') && !last.endsWith('ss') ? 1 : 0
+  const one = ending === 0 ? name : name.slice(0, -ending)
   return one.charAt(0).toUpperCase() + one.slice(1)
 }
 

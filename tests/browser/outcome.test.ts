@@ -96,7 +96,7 @@ describe('a day in the studio', () => {
     const { path } = await made<{ path: string }>(owner, '/api/wall-links', { name: 'Drying room' })
     const { page: wall } = await openPage(browser, server.origin, { viewport: { width: 834, height: 1112 } })
     await visit(wall, path)
-    const cell = wall.locator('main li:has(h3)').filter({ has: wall.getByRole('heading', { name: /^Tide boxes 1–3/ }) }).filter({ hasText: 'hands off' })
+    const cell = wall.locator('main li:has(h3)').filter({ has: wall.getByRole('heading', { name: /^Tide box/ }) }).filter({ hasText: 'hands off' })
     await cell.first().waitFor()
 
     const { page: week } = await openPage(browser, server.origin, {}, owner)
