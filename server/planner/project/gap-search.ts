@@ -3,8 +3,8 @@ import { apart, mirroredNetwork } from './network'
 import type { Found, SearchLimits } from './order-search'
 import type { Arcs, Project } from './project'
 import type { Network } from './network'
-
-interface Member { starts: Int32Array, makespan: number }
+import { vary } from './vary'
+import type { Member } from './vary'
 
 const population = 12
 const patience = 60
@@ -136,33 +136,12 @@ class GapSearch {
     if (++this.idle > patience * population) return this.restart()
     const parent = this.members[Math.floor(random() * this.members.length)]!
     const second = this.members[Math.floor(random() * this.members.length)]!
-    if (random() < 0.7 || parent === second) this.shake(parent)
-    else this.cross(parent, second)
+    vary(parent, second, this.project.minutes, this.keys, random)
     const makespan = random() < 0.5 ? this.justify(Math.ceil(parent.makespan * 1.2), parent.makespan) : this.place(parent.makespan)
     if (makespan === failed || makespan > parent.makespan) return
     parent.starts.set(this.trial)
     parent.makespan = makespan
     this.kept(parent)
-  }
-
-  private shake({ starts, makespan }: Member): void {
-    const { random } = this.limits
-    const width = makespan * (0.06 + 0.39 * random())
-    const from = random() * (makespan + width) - width
-    for (let i = 0; i < starts.length; i++) {
-      const middle = starts[i]! + this.project.minutes[i]! / 2
-      this.keys[i] = middle >= from && middle < from + width ? starts[i]! + (random() - 0.5) * width : starts[i]!
-    }
-  }
-
-  private cross(one: Member, other: Member): void {
-    const { random } = this.limits
-    const width = one.makespan * (0.2 + 0.4 * random())
-    const from = random() * (one.makespan - width)
-    for (let i = 0; i < one.starts.length; i++) {
-      const start = one.starts[i]!
-      this.keys[i] = start >= from && start < from + width ? start : other.starts[i]!
-    }
   }
 
   private restart(): void {

@@ -1,5 +1,6 @@
 import { apart } from './network'
 import { topological } from './project'
+import { Ranking } from './rank'
 import { Usage } from './usage'
 import type { Network } from './network'
 import type { Arcs, Project } from './project'
@@ -19,8 +20,7 @@ const mostRemovals = 6
 export class GapSerial {
   private readonly usage: Usage
   private readonly order: Int32Array
-  private readonly rank: Int32Array
-  private readonly key: Float64Array
+  private readonly ranking: Ranking
   private readonly low: Int32Array
   private readonly earliest: Int32Array
   private readonly latest: Int32Array
@@ -31,8 +31,7 @@ export class GapSerial {
     const size = project.size
     this.usage = new Usage(project)
     this.order = topological(size, before, turnedArcs(size, before))!
-    this.rank = new Int32Array(size)
-    this.key = new Float64Array(size)
+    this.ranking = new Ranking(size)
     this.low = new Int32Array(size)
     this.earliest = new Int32Array(size)
     this.latest = new Int32Array(size)
@@ -42,7 +41,7 @@ export class GapSerial {
   /** Starts in the order of `keys`, written to `starts`, all done by `end`. Returns the makespan, or `failed`. */
   decode(keys: Float64Array, starts: Int32Array, ends: Int32Array): number {
     const { size, minutes } = this.project
-    this.sort(keys)
+    this.ranking.by(keys, this.before, this.order)
     this.usage.clear()
     this.placed.fill(0)
     this.low.set(this.first)
@@ -50,7 +49,7 @@ export class GapSerial {
     let removals = mostRemovals * size
     let makespan = 0
     for (let i = 0; i < size; i++) {
-      const activity = this.rank[i]!
+      const activity = this.ranking.rank[i]!
       if (this.placed[activity]) continue
       const start = this.usage.firstFit(activity, this.earliest[activity]!)
       if (start > this.latest[activity]!) {
@@ -120,23 +119,6 @@ export class GapSerial {
       this.low[k] = reach
     }
     return true
-  }
-
-  private sort(keys: Float64Array): void {
-    const { key, rank, order } = this
-    const { at, other } = this.before
-    for (let i = 0; i < order.length; i++) {
-      const activity = order[i]!
-      let value = keys[activity]!
-      for (let k = at[activity]!; k < at[activity + 1]!; k++) if (key[other[k]!]! > value) value = key[other[k]!]!
-      key[activity] = value
-      let spot = i
-      while (spot > 0 && key[rank[spot - 1]!]! > value) {
-        rank[spot] = rank[spot - 1]!
-        spot--
-      }
-      rank[spot] = activity
-    }
   }
 }
 

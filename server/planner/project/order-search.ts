@@ -1,10 +1,10 @@
 import { Serial } from './serial'
 import type { Project } from './project'
+import { vary } from './vary'
+import type { Member } from './vary'
 
 export interface SearchLimits { random: () => number, schedules: number, shouldStop: () => boolean, bound: number }
 export interface Found { starts: Int32Array, makespan: number, schedules: number }
-
-interface Member { starts: Int32Array, makespan: number }
 
 /** How many plans are kept side by side: fewer when there is little time to better them. */
 const populationFor = (schedules: number) => (schedules <= 10_000 ? 8 : 16)
@@ -65,36 +65,12 @@ class OrderSearch {
     if (++this.idle > patience * this.population) return this.restart(tails)
     const parent = this.members[Math.floor(random() * this.members.length)]!
     const second = this.members[Math.floor(random() * this.members.length)]!
-    if (random() < 0.7 || parent === second) this.shake(parent)
-    else this.cross(parent, second)
+    vary(parent, second, this.project.minutes, this.keys, random)
     const makespan = this.serial.justify(this.keys, this.trial)
-    const replaced = makespan <= parent.makespan ? parent : null
-    if (!replaced) return
-    replaced.starts.set(this.trial)
-    replaced.makespan = makespan
-    this.kept(replaced)
-  }
-
-  /** The order inside a stretch of time is shaken. */
-  private shake({ starts, makespan }: Member): void {
-    const { random } = this.limits
-    const width = makespan * (0.06 + 0.39 * random())
-    const from = random() * (makespan + width) - width
-    for (let i = 0; i < starts.length; i++) {
-      const middle = starts[i]! + this.project.minutes[i]! / 2
-      this.keys[i] = middle >= from && middle < from + width ? starts[i]! + (random() - 0.5) * width : starts[i]!
-    }
-  }
-
-  /** Of one parent a stretch of time, of the other the rest. */
-  private cross(one: Member, other: Member): void {
-    const { random } = this.limits
-    const width = one.makespan * (0.2 + 0.4 * random())
-    const from = random() * (one.makespan - width)
-    for (let i = 0; i < one.starts.length; i++) {
-      const start = one.starts[i]!
-      this.keys[i] = start >= from && start < from + width ? start : other.starts[i]!
-    }
+    if (makespan > parent.makespan) return
+    parent.starts.set(this.trial)
+    parent.makespan = makespan
+    this.kept(parent)
   }
 
   private restart(tails: Int32Array): void {

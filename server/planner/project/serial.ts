@@ -1,5 +1,6 @@
-import { Usage } from './usage'
 import { topological } from './project'
+import { Ranking } from './rank'
+import { Usage } from './usage'
 import type { Arcs, Project } from './project'
 
 /** An order to place in and where to write the starts; keys are minutes, smaller first. */
@@ -12,21 +13,16 @@ export interface Side { readonly into: Arcs, readonly release: Int32Array, reado
  */
 export class Serial {
   private readonly usage: Usage
-  private readonly rank: Int32Array
-  private readonly key: Float64Array
+  private readonly ranking: Ranking
   private readonly mirrored: Int32Array
   private readonly forward: Side
   private readonly backward: Side
-  private readonly place: Int32Array
   schedules = 0
 
   constructor(readonly project: Project) {
     const order = topological(project.size, project.into, project.outOf)!
     this.usage = new Usage(project)
-    this.rank = new Int32Array(project.size)
-    this.place = new Int32Array(project.size)
-    order.forEach((activity, i) => { this.place[activity] = i })
-    this.key = new Float64Array(project.size)
+    this.ranking = new Ranking(project.size)
     this.mirrored = new Int32Array(project.size)
     this.forward = { into: project.into, release: project.release, order }
     this.backward = { into: mirrored(project), release: new Int32Array(project.size), order: order.slice().reverse() }
@@ -37,20 +33,15 @@ export class Serial {
     return this.run(this.forward, keys, starts)
   }
 
-  /** The same from the end: `keys` grow towards the beginning. Times count back from the end. */
-  decodeBackward(keys: Float64Array, starts: Int32Array): number {
-    return this.run(this.backward, keys, starts)
-  }
-
   private run(side: Side, keys: Float64Array, starts: Int32Array): number {
     const { size, minutes } = this.project
     const { into: { at, other, gap }, release } = side
-    this.sort(side, keys)
+    this.ranking.by(keys, side.into, side.order)
     this.usage.clear()
     this.schedules++
     let makespan = 0
     for (let i = 0; i < size; i++) {
-      const activity = this.rank[i]!
+      const activity = this.ranking.rank[i]!
       let from = release[activity]!
       for (let k = at[activity]!; k < at[activity + 1]!; k++) {
         const ready = starts[other[k]!]! + gap[k]!
@@ -62,25 +53,6 @@ export class Serial {
       if (start + minutes[activity]! > makespan) makespan = start + minutes[activity]!
     }
     return makespan
-  }
-
-  /** Nothing before what it comes after: keys are raised to those of its predecessors, ties go by the arcs. Nearly sorted: insertion is quickest. */
-  private sort(side: Side, keys: Float64Array): void {
-    const { key, rank } = this
-    const { at, other } = side.into
-    const { order } = side
-    for (let i = 0; i < order.length; i++) {
-      const activity = order[i]!
-      let value = keys[activity]!
-      for (let k = at[activity]!; k < at[activity + 1]!; k++) if (key[other[k]!]! > value) value = key[other[k]!]!
-      key[activity] = value
-      let spot = i
-      while (spot > 0 && key[rank[spot - 1]!]! > value) {
-        rank[spot] = rank[spot - 1]!
-        spot--
-      }
-      rank[spot] = activity
-    }
   }
 
   /** Right, then left: what `keys` begin with, ordered by when it ends. Two schedules; `starts` are those of the second. */
@@ -95,10 +67,9 @@ export class Serial {
 
 function mirrored(project: Project): Arcs {
   const { at, other, gap } = project.outOf
-  const from = (k: number) => gap[k]!
   const result = new Int32Array(gap.length)
   for (let activity = 0; activity < project.size; activity++) {
-    for (let k = at[activity]!; k < at[activity + 1]!; k++) result[k] = from(k) + project.minutes[other[k]!]! - project.minutes[activity]!
+    for (let k = at[activity]!; k < at[activity + 1]!; k++) result[k] = gap[k]! + project.minutes[other[k]!]! - project.minutes[activity]!
   }
   return { at, other, gap: result }
 }
