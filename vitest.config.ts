@@ -4,7 +4,7 @@ import { defineConfig } from 'vitest/config'
 
 const root = (path: string) => fileURLToPath(new URL(path, import.meta.url))
 const resolve = { alias: { '#shared': root('./shared'), '~~': root('.'), '~': root('.'), '@': root('.') } }
-const pure = (name: string) => ({ resolve, test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, testTimeout: 20_000 } })
+const pure = (name: string) => ({ resolve, test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, setupFiles: ['tests/helpers/seed.ts'], testTimeout: 20_000 } })
 const served = (name: string, retry = 0) => ({
   resolve,
   test: { name, include: [`tests/${name}/**/*.test.ts`], environment: 'node' as const, globalSetup: ['tests/helpers/build.ts'], fileParallelism: false, testTimeout: 60_000, hookTimeout: 120_000, retry },

@@ -2,9 +2,10 @@ import type { StudioProblem } from '~~/server/planning/problem'
 import type { Conflict, Plan } from '#shared/planning/types'
 import { planWords } from '#shared/words/plan'
 
-/** Why something has no start, each as one sentence that names the clash. */
+/** Why something has no start, or only one after its window, each as one sentence that names the clash. */
 export function clashSentences(plan: Plan, given: StudioProblem): string[] {
-  return [...new Set(plan.conflicts.map(conflict => sentence(conflict, given)))]
+  const missed = plan.entries.filter(entry => entry.afterRecovery).map(entry => planWords.windowMissed(stepOf(entry.activity, given)))
+  return [...new Set([...plan.conflicts.map(conflict => sentence(conflict, given)), ...missed])]
 }
 
 function sentence(conflict: Conflict, given: StudioProblem): string {

@@ -1,4 +1,4 @@
-import { minutesFrom, reachedAt, rungFor } from '~~/server/planning/waits'
+import { metAt, minutesFrom } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { PlanInput } from '#shared/planning/problem'
@@ -32,23 +32,32 @@ export function lagsOf(works: readonly StepWork[], facts: PlanFacts, toCome: Wai
       if (!first) continue
       const before = byStep.get(link.fromStepId)
       if (facts.aside.has(link.fromStepId)) found.unreachable.add(first.id)
-      else if (before && lastTurn(before)) between(found, before, first, link, facts, toCome)
-      else lying(found, link.fromStepId, first, link, facts, zeroAt)
+      else if (before?.turns.some(turn => turn.kind === 'work')) between(found, before, first, link, facts, toCome)
+      else {
+        // A film may lie already while looks at it are still to come.
+        follow(found, before?.turns ?? [], first)
+        lying(found, link.fromStepId, first, link, facts, zeroAt)
+      }
     }
   }
   return found
 }
 
 const firstWork = (work: StepWork) => work.turns.find(turn => turn.kind === 'work') ?? null
-const lastTurn = (work: StepWork) => work.turns[work.turns.length - 1] ?? null
 
 interface Asked { milestone: MilestoneName | null, risk: Risk, windowed: boolean }
 
-/** From a step that is still to be done. */
+/** After the end of every turn of a step. */
+function follow(found: LagsOfPiece, before: readonly TurnRow[], first: TurnRow) {
+  for (const turn of before) found.lags.push({ from: activityId(turn.id), to: activityId(first.id), min: 0 })
+}
+
+/** From a step with coats still to come. */
 function between(found: LagsOfPiece, before: StepWork, first: TurnRow, link: Asked, facts: PlanFacts, toCome: WaitsToCome) {
-  for (const turn of before.turns) if (turn.kind !== 'work' || link.milestone === null) found.lags.push({ from: activityId(turn.id), to: activityId(first.id), min: 0 })
+  const film = link.milestone !== null || link.windowed
+  follow(found, before.turns.filter(turn => turn.kind !== 'work' || !film), first)
   const coat = [...before.turns].reverse().find(turn => turn.kind === 'work')
-  if (link.milestone === null || !coat) return
+  if (!film || !coat) return
   const { minutes, promised, windows } = toCome.wait(before.step, before.roomId, link.milestone, link.risk, link.windowed)
   add(found, first, activityId(coat.id), minutes, promised, windows, recoveryOf(before.step.materialVersionId, facts))
 }
@@ -56,10 +65,9 @@ function between(found: LagsOfPiece, before: StepWork, first: TurnRow, link: Ask
 /** From a film that lies already: its times are instants. */
 function lying(found: LagsOfPiece, fromStepId: number, first: TurnRow, link: Asked, facts: PlanFacts, zeroAt: number) {
   const film = facts.films.filter(each => each.stepId === fromStepId).at(-1)
-  if (!film || link.milestone === null) return
-  const rung = rungFor(facts.rungs.filter(each => each.coatId === film.coatId).map(each => ({ ...each, name: each.milestone })), link.milestone)
-  if (!rung) return
-  const { at, promised } = reachedAt(rung, link.risk, film.endedAt)
+  if (!film || (link.milestone === null && !link.windowed)) return
+  const rungs = facts.rungs.filter(each => each.coatId === film.coatId).map(each => ({ ...each, name: each.milestone }))
+  const { at, promised } = metAt(rungs, link.milestone, link.risk, film.endedAt)
   const windows = link.windowed ? facts.windows.filter(each => each.coatId === film.coatId).flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(zeroAt, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(zeroAt, shutsAt, Math.floor)]])) : []
   add(found, first, null, at === null ? null : minutesFrom(zeroAt, at, Math.ceil), promised, windows, recoveryOf(film.versionId, facts))
 }

@@ -1,8 +1,14 @@
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { StudioProblem } from '~~/server/planning/problem'
+import { handsOf } from '~~/server/planning/hands'
 import { minutesFrom } from '~~/server/planning/waits'
 import { lastStart } from '#shared/planning/lastStart'
 import type { Interval, Plan } from '#shared/planning/types'
+import { studioZone } from '#shared/time'
+
+const minute = 60_000
+/** Hours that lie behind count too, so far back: what was missed today is said to be late. */
+const behind = 24 * 60
 
 /** The last moment to begin a session and still do all, and as many as can still be done; minutes from the problem's zero. */
 export interface LastStarts { lastStart: number | null, firstFew: number | null, lastStartFew: number | null }
@@ -15,7 +21,7 @@ export interface LastStarts { lastStart: number | null, firstFew: number | null,
 export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts, nowMinute: number): Map<string, LastStarts> {
   const shuts = shutsOf(given, facts)
   const works = new Map<string, StudioProblem['works'][number]>(given.works.flatMap(work => work.turns.map(turn => [`t${turn.id}`, work] as const)))
-  const open = hoursOfAnybody(given)
+  const open = hoursOfAnybody(given, facts, Math.max(0, ...[...shuts.values()].map(each => each.shuts)))
   const groups = new Map<string, string[]>()
   for (const entry of plan.entries) {
     if (!shuts.has(entry.activity)) continue
@@ -26,15 +32,19 @@ export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts,
   for (const members of groups.values()) {
     const step = works.get(members[0] ?? '')?.step
     if (!step) continue
-    const { all, firstFew } = lastStart({ shuts: members.map(id => shuts.get(id) ?? 0), setup: step.setupMin, minutes: step.pieceMin, now: nowMinute, open })
+    const windows = members.flatMap(id => shuts.get(id) ?? [])
+    const { all, firstFew } = lastStart({ shuts: windows.map(each => each.shuts), opens: windows.map(each => each.opens), setup: step.setupMin, minutes: step.pieceMin, now: nowMinute, open })
     for (const id of members) found.set(id, { lastStart: all, firstFew: firstFew?.count ?? null, lastStartFew: firstFew?.minute ?? null })
   }
   return found
 }
 
-/** When the window of a waiting turn shuts for good; only films that lie already have a shutting that is foretold. */
-function shutsOf(given: StudioProblem, facts: PlanFacts): Map<string, number> {
-  const found = new Map<string, number>()
+/** Minutes from the problem's zero. */
+interface LastWindow { opens: number | null, shuts: number }
+
+/** When the window of a waiting turn first opens and shuts for good; only films that lie already have a shutting that is foretold. */
+function shutsOf(given: StudioProblem, facts: PlanFacts): Map<string, LastWindow> {
+  const found = new Map<string, LastWindow>()
   for (const { step, turns } of given.works) {
     const first = turns.find(turn => turn.kind === 'work' && turn.status === 'waiting')
     if (!first) continue
@@ -44,15 +54,26 @@ function shutsOf(given: StudioProblem, facts: PlanFacts): Map<string, number> {
       const film = facts.films.filter(each => each.stepId === stepId).at(-1)
       const ends = facts.windows.filter(each => each.coatId === film?.coatId)
       const last = ends.reduce<number | null | undefined>((end, each) => (end === null || each.shutsAt === null ? null : Math.max(end ?? -Infinity, each.shutsAt)), undefined)
-      if (typeof last === 'number') found.set(`t${first.id}`, Math.min(found.get(`t${first.id}`) ?? Infinity, minutesFrom(given.zeroAt, last, Math.floor)))
+      if (typeof last !== 'number') continue
+      const known = found.get(`t${first.id}`)
+      // Two films beneath must both be open, and the first to shut shuts for both.
+      const opened = [known?.opens ?? null, firstOpening(ends, given.zeroAt)].filter(each => each !== null)
+      found.set(`t${first.id}`, { opens: opened.length === 0 ? null : Math.max(...opened), shuts: Math.min(known?.shuts ?? Infinity, minutesFrom(given.zeroAt, last, Math.floor)) })
     }
   }
   return found
 }
 
-/** The union of everybody's hours: a session needs somebody, not everybody. */
-function hoursOfAnybody(given: StudioProblem): Interval[] {
-  const all = given.hands.flatMap(each => each.open).sort((a, b) => a[0] - b[0])
+/** When the first of a film's windows opens, minutes from zero; null when one is open from the start. */
+function firstOpening(windows: PlanFacts['windows'], zeroAt: number): number | null {
+  const opens = windows.map(each => each.opensAt)
+  return opens.includes(null) ? null : minutesFrom(zeroAt, Math.min(...opens.filter(each => each !== null)), Math.ceil)
+}
+
+/** The union of everybody's hours till `until`: a session needs somebody, not everybody. */
+function hoursOfAnybody({ zeroAt }: StudioProblem, facts: PlanFacts, until: number): Interval[] {
+  const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt - behind * minute, zeroAt + until * minute)
+  const all = hands.flatMap(each => each.open).map(([from, to]): Interval => [from - behind, to - behind]).sort((a, b) => a[0] - b[0])
   const joined: [number, number][] = []
   for (const [from, to] of all) {
     const last = joined[joined.length - 1]

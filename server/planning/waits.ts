@@ -33,6 +33,12 @@ export function rungFor<Rung extends { name: string }>(rungs: readonly Rung[], n
   return rungs.find(rung => rung.name === name) ?? rungs.find(rung => milestoneNames.findIndex(each => each === rung.name) >= wanted) ?? rungs[rungs.length - 1] ?? null
 }
 
+/** When a film that went on at `since` lets the next step begin as far as its milestone goes: at once where none is asked for, and its window alone says. ms UTC. */
+export function metAt(rungs: readonly MilestonePrediction[], milestone: MilestoneName | null, risk: Risk, since: number): { at: number | null, promised: boolean } {
+  const rung = milestone && rungFor(rungs, milestone)
+  return rung ? reachedAt(rung, risk, since) : { at: since, promised: true }
+}
+
 /**
  * How long coats that are still to come will have to wait, as if each went on now in the room its piece stands in.
  * One prediction for each material, room, coat and ground, kept for the length of one plan.
@@ -53,11 +59,10 @@ export class WaitsToCome {
   }
 
   /** From the end of a coat of this step until the next may follow. */
-  wait(step: PlanFacts['steps'][number], roomId: number | null, milestone: MilestoneName, risk: Risk, windowed: boolean): Wait {
+  wait(step: PlanFacts['steps'][number], roomId: number | null, milestone: MilestoneName | null, risk: Risk, windowed: boolean): Wait {
     const prediction = this.#predict(step, roomId)
-    const rung = prediction && rungFor(prediction.milestones, milestone)
-    if (!prediction || !rung) return { minutes: 0, promised: true, windows: [] }
-    const { at, promised } = reachedAt(rung, risk, this.now)
+    if (!prediction) return { minutes: 0, promised: true, windows: [] }
+    const { at, promised } = metAt(prediction.milestones, milestone, risk, this.now)
     const windows = windowed ? prediction.windows.flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(this.now, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(this.now, shutsAt, Math.floor)]])) : []
     return { minutes: at === null ? null : minutesFrom(this.now, at, Math.ceil), promised, windows }
   }

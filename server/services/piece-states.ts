@@ -115,7 +115,7 @@ function nextTurns(turns: readonly TurnRow[]): TurnRow[] {
 interface Asked { milestone: WaitState['milestone'], risk: WaitState['risk'], windowed: boolean }
 
 function waitOf(step: string, status: WaitState['status'], link: Asked, films: readonly FilmState[]): WaitState {
-  const asks = link.milestone === null ? [] : films
+  const asks = link.milestone === null && !link.windowed ? [] : films
   return {
     step, status, milestone: link.milestone, risk: link.risk, windowed: link.windowed,
     films: asks.map(film => ({

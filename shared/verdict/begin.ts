@@ -62,19 +62,22 @@ function metAt(moment: Moment, risk: Risk): number | null {
 function obstacle(link: LinkState): BeginReason | null {
   const { step, status } = link
   if (status === 'left out') return null
-  if (link.milestone === null) return status === 'done' ? null : { code: 'waits for', step }
+  if (link.milestone === null && !link.windowed) return status === 'done' ? null : { code: 'waits for', step }
   if (status !== 'done' && status !== 'resting') return { code: 'waits for', step }
   for (const { moment, hold } of link.films) {
     if (hold) return { code: 'held', step, hold }
+    if (link.milestone === null) continue
     if (moment === null) return { code: 'unknown film', step }
     if (metAt(moment, link.risk) === null) return { code: 'no promise', step, reason: moment.reason }
   }
   return null
 }
 
-/** When one film lets the next step begin: past its milestone, and inside a window where the link asks for one. */
+const dryEnough = ({ moment }: LinkFilm, { milestone, risk }: LinkState) => milestone === null ? -Infinity : (moment && metAt(moment, risk)) ?? Infinity
+
+/** When one film lets the next step begin: past its milestone, and inside a window where the link asks for one; with no milestone the window alone says. */
 function chancesOf(film: LinkFilm, link: LinkState): Chance[] {
-  const met = film.moment ? metAt(film.moment, link.risk) ?? Infinity : Infinity
+  const met = dryEnough(film, link)
   if (!link.windowed || film.windows.length === 0) return [{ from: met, till: Infinity, link }]
   return film.windows.flatMap(({ opensAt, shutsAt, fromStart }) => {
     if (opensAt === null) return []
@@ -89,7 +92,7 @@ function overlap(some: readonly Chance[], others: readonly Chance[]): Chance[] {
 }
 
 function chances(links: readonly LinkState[]): Chance[] {
-  const asking = links.filter(link => link.milestone !== null && link.status !== 'left out')
+  const asking = links.filter(link => (link.milestone !== null || link.windowed) && link.status !== 'left out')
   const films = asking.flatMap(link => link.films.map(film => chancesOf(film, link)))
   return films.reduce<Chance[]>(overlap, [{ from: -Infinity, till: Infinity, link: null }])
 }
@@ -125,7 +128,7 @@ export function mayBegin(step: BeginFacts, now: number, heardAt: number | null, 
 
 /** What the waiting is for: the film itself, or a window that opens later than the film would allow. */
 function waiting(link: LinkState, from: number): BeginReason {
-  const dry = Math.max(...link.films.map(film => film.moment ? metAt(film.moment, link.risk) ?? Infinity : Infinity))
+  const dry = Math.max(...link.films.map(film => dryEnough(film, link)))
   if (link.windowed && dry < from) return { code: 'window to come', step: link.step }
   return { code: 'drying', step: link.step, milestone: link.milestone ?? 'dry-to-handle' }
 }

@@ -1,12 +1,13 @@
 import type { InputSource, UsedInput } from '#shared/vapour/facts'
-import type { Levers, RoomSums } from '#shared/vapour/picture'
+import type { Contribution, Levers, RoomSums } from '#shared/vapour/picture'
 import type { FireStage, VapourBand, VapourInput } from '#shared/vapour/types'
 import type { AirMove } from '#shared/terms'
 import { clockTime } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { Units } from '#shared/units'
 import { airflowText, volumeText } from '#shared/units'
-import { listText } from '#shared/words/group'
+import { grouped } from '#shared/grouped'
+import { groupNames, listText } from '#shared/words/group'
 
 /** Why a setting of air and fire stays as it is. */
 export const vapourRefusals = {
@@ -203,4 +204,13 @@ export function setUpText(room: { volumeM3: number | null, exhaustM3H: number | 
     ...room.airChangesPerHour === null ? [] : [`${roundly(room.airChangesPerHour)} air changes an hour without it`],
     moves ? vapourWords.moves[moves].toLowerCase() : 'nobody has said how its air is moved',
   ].join(', ')
+}
+
+/** "Almanacs 1–4: Water-based varnish", and of a planned coat that it is planned: what adds to a room's air, coats of one material together. */
+export function contributionLines(contributions: readonly Contribution[]): { key: string, says: string, grams: number }[] {
+  return [...grouped(contributions, each => `${each.material} ${each.planned}`)].map(([key, coats]) => ({
+    key,
+    says: `${groupNames([...new Set(coats.map(each => each.piece))])}: ${coats[0]?.material || vapourWords.notKnown}${coats[0]?.planned ? `, ${vapourWords.planned}` : ''}`,
+    grams: coats.reduce((sum, each) => sum + each.grams, 0),
+  }))
 }

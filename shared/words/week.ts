@@ -22,8 +22,8 @@ export const weekWords = {
   noBatchesSays: 'Start a batch, and its planned end shows here against its date.',
   start: 'Start a batch',
   key: 'The bar runs to the planned end; where it fades, what is drying now may still make it later. The flag is the date.',
-  clashes: 'What finds no time',
-  noClashes: 'Everything that can be planned has a time.',
+  clashes: 'What finds no time or misses its window',
+  noClashes: 'Everything that can be planned has a time and keeps its window.',
   rests: 'What this rests on',
   noPlan: 'There is no plan yet: nothing waits for hands.',
   pieces: (count: number) => count === 1 ? '1 piece' : `${count} pieces`,
@@ -37,6 +37,7 @@ const single: ReadonlySet<string> = new Set(['Press', 'Booth', 'Drying cabinet',
 
 const longDays = ['Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday', 'Sunday'] as const
 export const weekdayText = (weekday: number) => longDays[weekday - 1] ?? ''
+export const weekdayShort = (weekday: number) => weekdayText(weekday).slice(0, 3)
 
 /** "closed", "closed: fair", null on a working day. */
 export const closedText = ({ closed }: WeekDay) => closed === null ? null : closed === '' ? 'closed' : `closed: ${closed}`
@@ -46,7 +47,8 @@ const hoursText = (minutes: number) => `${hoursFigure(minutes)} h`
 
 /** Inside a person's tray: "3.5 of 8 h", "closed", "away", "off", "nothing planned". */
 export function personText(load: Load, day: WeekDay): string {
-  if (load.of === 0 && load.used === 0) return day.closed !== null ? 'closed' : load.away ? 'away' : day.today ? 'over' : 'off'
+  // What is left of a day is over before its last minute.
+  if (hoursFigure(load.of) === 0 && load.used === 0) return day.closed !== null ? 'closed' : load.away ? 'away' : day.today ? 'over' : 'off'
   if (load.of === 0) return `${hoursText(load.used)}, out of hours`
   return load.used === 0 ? `free, ${hoursText(load.of)}` : `${hoursFigure(load.used)} of ${hoursText(load.of)}`
 }

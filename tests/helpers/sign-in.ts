@@ -1,3 +1,5 @@
+import { morningZone } from './server'
+
 /** What came back, with its body already read. `body` is whatever JSON the route sent; tests look into it freely. */
 export interface Answer<T = unknown> { status: number, body: T, headers: Headers }
 
@@ -45,7 +47,7 @@ export async function signIn(origin: string, email: string, password = testPassw
 }
 
 /** Makes the first studio of an empty server and returns its owner, signed in. */
-export async function firstStudio(origin: string, name = 'Fir Lane', zone = 'Europe/London'): Promise<Visitor> {
+export async function firstStudio(origin: string, name = 'Fir Lane', zone = morningZone()): Promise<Visitor> {
   const owner = visitor(origin)
   const { status } = await owner.post('/api/studios', { name, zone, person: { name: 'Wren', email: 'wren@example.test', password: testPassword } })
   if (status !== 200) throw new Error(`Making the first studio was answered with ${status}.`)

@@ -2,7 +2,7 @@ import { mkdtempSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { freePort, startServer } from '../../helpers/server'
+import { freePort, morningZone, startServer } from '../../helpers/server'
 import { firstStudio } from '../../helpers/sign-in'
 import type { Visitor } from '../../helpers/sign-in'
 import { roomOf } from '../access/rows'
@@ -30,12 +30,6 @@ const sleep = (ms: number) => new Promise<void>(resolve => setTimeout(resolve, m
 async function until(holds: () => boolean, ms: number) {
   for (const end = Date.now() + ms; !holds() && Date.now() < end;) await sleep(50)
   return holds()
-}
-
-/** A zone in which it is between ten and eleven now: no evening comes near, whenever the test runs. */
-function morningZone() {
-  const ahead = (10 - new Date().getUTCHours() + 36) % 24 - 12
-  return `Etc/GMT${ahead > 0 ? '-' : '+'}${Math.abs(ahead)}`
 }
 
 async function furnish(owner: Visitor, receivers: Receivers, kept: Records): Promise<Bench[]> {

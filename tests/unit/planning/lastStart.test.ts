@@ -25,6 +25,21 @@ describe('the last moment to start', () => {
     expect(lastStart({ shuts: twelve, setup: 15, minutes: 8, cleanup: 9, now: 0, open: [[0, 480], [900, 1400]] })).toEqual({ all: 360, firstFew: null })
   })
 
+  it('finds none when hours lie only before the window opens', () => {
+    // The window is 600 to 900, people leave at 560 and come at 1000: set-up of 20 may be done from 580 on, which nobody is there for.
+    const night = { shuts: [900], setup: 20, minutes: 30, now: 0, open: [[0, 560], [1000, 1400]] as const }
+    expect(lastStart({ ...night, opens: [600] })).toEqual({ all: null, firstFew: null })
+    // Open all the while, 50 minutes end at 560.
+    expect(lastStart(night).all).toBe(510)
+  })
+
+  it('comes to each piece once its own window is open', () => {
+    // The second is come to 30 later, so its opening at 130 asks for a start from 100 on, as the first's at 100 does.
+    const two = { shuts: [300, 310], opens: [100, 130], setup: 0, minutes: 30, now: 0 }
+    expect(lastStart({ ...two, open: [[0, 160]] }).all).toBe(100)
+    expect(lastStart({ ...two, open: [[0, 159]] }).all).toBeNull()
+  })
+
   it('is null when no hours are long enough', () => {
     expect(lastStart({ shuts: [600, 600], setup: 0, minutes: 50, now: 0, open: [[0, 60]] })).toEqual({ all: null, firstFew: { count: 1, minute: 10 } })
   })

@@ -104,6 +104,15 @@ describe('recoat windows', () => {
     expect(code(step({ links: [epoxy(hour(11))] }), hour(10.5))).toBe('window shut')
   })
 
+  it('say alone when, where no milestone is asked for', () => {
+    const tacky = link({ ...epoxy(hour(20)), milestone: null, films: [{ moment: null, hold: null, windows: [{ opensAt: hour(10), shutsAt: hour(20), fromStart: false }] }] })
+    expect(mayBegin(step({ links: [tacky] }), hour(9), null, maker)).toMatchObject({ may: false, from: hour(10), till: hour(20), because: { code: 'window to come' } })
+    expect(mayBegin(step({ links: [tacky] }), hour(10), null, maker)).toMatchObject({ may: true, till: hour(20) })
+    expect(code(step({ links: [tacky] }), hour(20))).toBe('window shut')
+    expect(code(step({ links: [{ ...tacky, status: 'waiting' }] }), hour(10))).toBe('waits for')
+    expect(code(step({ links: [{ ...tacky, films: [{ ...tacky.films[0]!, hold: 'clamps' }] }] }), hour(10))).toBe('held')
+  })
+
   it('must all be open at once', () => {
     expect(mayBegin(step({ links: [epoxy(hour(20)), epoxy(hour(15))] }), hour(13), null, maker)).toMatchObject({ may: true, till: hour(15) })
     const other = link({ ...epoxy(hour(30)), films: [{ moment: moment(hour(16)), hold: null, windows: [{ opensAt: hour(16), shutsAt: hour(30), fromStart: false }] }] })
