@@ -59,8 +59,12 @@ export type Actor = typeof actors[number]
 export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone'] as const
 export type ActKind = typeof actKinds[number]
 
-export const callKinds = ['last moment to start', 'ready', 'before you leave', 'check the room', 'rags', 'vapour'] as const
+export const callKinds = ['last moment to start', 'ready', 'before you leave', 'check the room', 'promise slipping', 'rags', 'vapour'] as const
 export type CallKind = typeof callKinds[number]
+
+/** What moves a promised date: drying slower than counted on, coats done again, work that takes longer, hours that do not reach the bench, and waiting for hands that are busy. */
+export const promiseCauses = ['drying', 'rework', 'minutes', 'hours', 'waiting'] as const
+export type PromiseCause = typeof promiseCauses[number]
 
 /** Calls about fire: nobody can switch them off, and no quiet hour holds them. */
 export const fireCallKinds = ['rags', 'vapour'] as const satisfies readonly CallKind[]

@@ -11,7 +11,7 @@ import type { Channels, OutgoingCall, SendOutcome } from './types'
 const minute = 60
 
 /** How long a push service may keep trying, in seconds: until the call is asked again, or says nothing any more. */
-const timeToLive: Record<CallKind, number> = { 'rags': 15 * minute, 'vapour': 60 * minute, 'check the room': 60 * minute, 'last moment to start': 30 * minute, 'ready': 240 * minute, 'before you leave': 120 * minute }
+const timeToLive: Record<CallKind, number> = { 'rags': 15 * minute, 'vapour': 60 * minute, 'check the room': 60 * minute, 'last moment to start': 30 * minute, 'ready': 240 * minute, 'before you leave': 120 * minute, 'promise slipping': 12 * 60 * minute }
 
 /** The ways out of this installation, by its settings. */
 export function openChannels(db: Database, config: Config): Channels {

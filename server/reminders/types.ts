@@ -6,7 +6,7 @@ export type Audience = 'makers' | 'makers and the one who did it' | 'everybody'
 /** A call the studio's state asks for now. Two with the same cause, stage and repeat are one. Times in ms UTC. */
 export interface WantedReminder {
   kind: CallKind
-  subjectType: 'batch' | 'studio' | 'rag duty' | 'vapour start' | 'keep-out'
+  subjectType: 'batch' | 'studio' | 'rag duty' | 'vapour start' | 'keep-out' | 'order'
   subjectId: number
   /** What keeps twelve covers of one row to one call. */
   groupKey: string

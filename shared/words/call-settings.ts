@@ -17,6 +17,7 @@ export const callSettings = {
     'ready': { label: 'Ready', hint: 'When the next step over a film is due.' },
     'before you leave': { label: 'Before you leave', hint: 'Half an hour before the studio shuts: what shuts overnight, what is outdoors, heating, lids, glue pot, rags.' },
     'check the room': { label: 'Time to check the spray room', hint: 'When a shut room is not expected to hold much vapour any more. It stays shut until somebody has looked.' },
+    'promise slipping': { label: 'A promise slips', hint: 'Once, when a promised date is likely to pass, with its cause and whom to tell.' },
     'rags': { label: 'Oily rags', hint: 'This call cannot be switched off. Oily rags can catch fire by themselves hours later, so it goes to everybody until somebody answers.' },
     'vapour': { label: 'Solvent work begins', hint: 'This call cannot be switched off. It tells everybody which room to stay out of, and where flames and heaters must be off.' },
   } satisfies Record<CallKind, { label: string, hint: string }>,

@@ -84,7 +84,7 @@ describe('the calls one gets', () => {
   it('are few for a helper, and never without those about fire', async () => {
     expect((await helper.get('/api/calls')).body).toEqual([
       { kind: 'last moment to start', wanted: false, fixed: false }, { kind: 'ready', wanted: false, fixed: false },
-      { kind: 'before you leave', wanted: false, fixed: false }, { kind: 'check the room', wanted: false, fixed: false },
+      { kind: 'before you leave', wanted: false, fixed: false }, { kind: 'check the room', wanted: false, fixed: false }, { kind: 'promise slipping', wanted: false, fixed: false },
       { kind: 'rags', wanted: true, fixed: true }, { kind: 'vapour', wanted: true, fixed: true },
     ])
     expect((await helper.put('/api/calls', { kind: 'rags', wanted: false })).status).toBe(422)
