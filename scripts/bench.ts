@@ -2,11 +2,12 @@ import { cpus } from 'node:os'
 import { benchBoard } from './bench/board'
 import { benchPlanner } from './bench/planner'
 import { benchPredict } from './bench/predict'
+import { benchPromise } from './bench/promise'
 import { benchReadings } from './bench/readings'
 import { benchStart } from './bench/start'
 import { benchVapour } from './bench/vapour'
 
-const benches: Record<string, () => string[] | Promise<string[]>> = { board: benchBoard, planner: benchPlanner, predict: benchPredict, readings: benchReadings, start: benchStart, vapour: benchVapour }
+const benches: Record<string, () => string[] | Promise<string[]>> = { board: benchBoard, planner: benchPlanner, predict: benchPredict, promise: benchPromise, readings: benchReadings, start: benchStart, vapour: benchVapour }
 
 const usage = `npm run bench [-- NAME ...]
 

@@ -1,7 +1,7 @@
 import { makePlan } from '#shared/planning/plan'
 import { projectOf } from './project/project'
 import { solveProject } from './project/solve-project'
-import { randomFrom } from './random'
+import { randomFrom } from '#shared/chance'
 import type { Conflict, Plan, PlanProblem } from '#shared/planning/types'
 import type { SearchLimits } from './project/order-search'
 

@@ -12,7 +12,7 @@ export function readPlanFacts(db: Database, studioId: number) {
   const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
   if (!owner) return null
   const here = and(isNull(piece.goneAt), isNull(batch.closedAt))
-  const pieces = db.select({ id: piece.id, batchId: piece.batchId, sizeUnits: piece.sizeUnits, dueAt: order.dueAt, weight: order.weight })
+  const pieces = db.select({ id: piece.id, batchId: piece.batchId, sizeUnits: piece.sizeUnits, startsAt: batch.startsAt, dueAt: order.dueAt, weight: order.weight })
     .from(piece).innerJoin(batch, eq(batch.id, piece.batchId)).leftJoin(order, eq(order.id, batch.orderId)).where(scoped(piece, studioId, here)).orderBy(asc(piece.id)).all()
   const openSteps = scoped(pieceStep, studioId, sql`${pieceStep.status} in ('waiting', 'doing', 'resting', 'set aside')`)
   const steps = db.select({ step: pieceStep }).from(pieceStep).innerJoin(piece, eq(piece.id, pieceStep.pieceId)).innerJoin(batch, eq(batch.id, piece.batchId))

@@ -7,7 +7,10 @@ import type { MilestoneName, Risk } from '#shared/terms'
 
 type Step = PlanFacts['steps'][number]
 type TurnRow = PlanFacts['turns'][number]
-export type LagInput = NonNullable<PlanInput['lags']>[number]
+
+/** The film whose drying a lag waits for: one to come, by its step and room, or one that lies already (`coatId`). `least`: minutes it waits whatever the film does. */
+export interface LagFilm { step: Step | null, roomId: number | null, coatId: number | null, milestone: MilestoneName | null, windowed: boolean, least: number }
+export type LagInput = NonNullable<PlanInput['lags']>[number] & { film?: LagFilm }
 
 /** What a missed window costs before the recovery's own minutes, in the objective (planning value). */
 const missed = 1
@@ -59,7 +62,7 @@ function between(found: LagsOfPiece, before: StepWork, first: TurnRow, link: Ask
   const coat = [...before.turns].reverse().find(turn => turn.kind === 'work')
   if (!film || !coat) return
   const { minutes, promised, windows } = toCome.wait(before.step, before.roomId, link.milestone, link.risk, link.windowed)
-  add(found, first, activityId(coat.id), minutes, promised, windows, recoveryOf(before.step.materialVersionId, facts))
+  add(found, first, activityId(coat.id), minutes, promised, windows, recoveryOf(before.step.materialVersionId, facts), { step: before.step, roomId: before.roomId, coatId: null, milestone: link.milestone, windowed: link.windowed, least: 0 })
 }
 
 /** From a film that lies already: its times are instants. */
@@ -69,7 +72,7 @@ function lying(found: LagsOfPiece, fromStepId: number, first: TurnRow, link: Ask
   const rungs = facts.rungs.filter(each => each.coatId === film.coatId).map(each => ({ ...each, name: each.milestone }))
   const { at, promised } = metAt(rungs, link.milestone, link.risk, film.endedAt)
   const windows = link.windowed ? facts.windows.filter(each => each.coatId === film.coatId).flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(zeroAt, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(zeroAt, shutsAt, Math.floor)]])) : []
-  add(found, first, null, at === null ? null : minutesFrom(zeroAt, at, Math.ceil), promised, windows, recoveryOf(film.versionId, facts))
+  add(found, first, null, at === null ? null : minutesFrom(zeroAt, at, Math.ceil), promised, windows, recoveryOf(film.versionId, facts), { step: null, roomId: null, coatId: film.coatId, milestone: link.milestone, windowed: link.windowed, least: 0 })
 }
 
 /** Inside one step: the coats of a round, the looks inside a rest, the release from clamps. */
@@ -83,14 +86,14 @@ function inside(found: LagsOfPiece, work: StepWork, facts: PlanFacts, toCome: Wa
     if (!before) continue
     const { minutes, promised, windows } = toCome.wait(work.step, work.roomId, 'ready-to-recoat', 'p90', true)
     const overnight = coat.day > before.day ? aNight : 0
-    add(found, coat, activityId(before.id), minutes === null ? null : Math.max(minutes, overnight), promised, windows, recoveryOf(work.step.materialVersionId, facts))
+    add(found, coat, activityId(before.id), minutes === null ? null : Math.max(minutes, overnight), promised, windows, recoveryOf(work.step.materialVersionId, facts), { step: work.step, roomId: work.roomId, coatId: null, milestone: 'ready-to-recoat', windowed: true, least: overnight })
   }
   const last = coats[coats.length - 1]
   for (const turn of work.turns) {
     if (turn.kind === 'check') rest(found, turn, last ?? null, turn.checkAfterMin ?? 0, work, facts, zeroAt)
     else if (turn.kind === 'release' && last) {
       const { minutes, promised } = toCome.wait(work.step, work.roomId, 'out-of-clamps', 'p90', false)
-      add(found, turn, activityId(last.id), minutes, promised, [], null)
+      add(found, turn, activityId(last.id), minutes, promised, [], null, { step: work.step, roomId: work.roomId, coatId: null, milestone: 'out-of-clamps', windowed: false, least: 0 })
     }
     else if (turn.kind === 'release') lying(found, work.step.id, turn, { milestone: 'out-of-clamps', risk: 'p90', windowed: false }, facts, zeroAt)
   }
@@ -102,21 +105,27 @@ function rest(found: LagsOfPiece, turn: TurnRow, after: TurnRow | null, minutes:
   if (!after && film) found.lags.push({ from: null, to: activityId(turn.id), min: Math.max(0, minutesFrom(zeroAt, film.endedAt, Math.ceil) + minutes) })
 }
 
-function add(found: LagsOfPiece, to: TurnRow, from: string | null, minutes: number | null, promised: boolean, windows: readonly LagWindow[], recovery: Recovery | null) {
+function add(found: LagsOfPiece, to: TurnRow, from: string | null, minutes: number | null, promised: boolean, windows: readonly LagWindow[], recovery: Recovery | null, film?: LagFilm) {
   if (!promised) found.untested.add(to.id)
   if (minutes === null) {
     found.unreachable.add(to.id)
     return
   }
-  const least = from === null ? Math.max(0, minutes) : minutes
+  found.lags.push({ from, to: activityId(to.id), ...lagTimes(from === null, minutes, windows, recovery), film })
+}
+
+/**
+ * When the next may begin after a film: its milestone and its windows together, as the planner asks for them. Minutes from the end of the
+ * coat, or from minute 0 for one that lies already.
+ */
+export function lagTimes(lies: boolean, minutes: number, windows: readonly LagWindow[], recovery: Recovery | null): Pick<LagInput, 'min' | 'windows' | 'recovery'> {
+  const least = lies ? Math.max(0, minutes) : minutes
   const chances = windows.flatMap(([opens, shuts]): LagWindow[] => {
     // A window open from the start may be used before the rung that others wait for.
     const begins = Math.max(opens <= 0 ? Math.max(0, opens) : Math.max(opens, least), 0)
     return shuts === null || shuts >= begins ? [[begins, shuts]] : []
   })
-  if (windows.length === 0) found.lags.push({ from, to: activityId(to.id), min: least })
-  else if (chances.length > 0) found.lags.push({ from, to: activityId(to.id), windows: apart(chances), recovery: recovery ?? { penalty: missed, minutes: 0 } })
-  else found.lags.push({ from, to: activityId(to.id), min: least })
+  return chances.length > 0 ? { windows: apart(chances), recovery: recovery ?? { penalty: missed, minutes: 0 } } : { min: least }
 }
 
 /** Sorted and joined where they overlap, as the planner asks for them. */

@@ -2,7 +2,7 @@ import { handsOf } from '~~/server/planning/hands'
 import type { Hands } from '~~/server/planning/hands'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId, lagsOf } from '~~/server/planning/lags'
-import type { LagInput, StepWork } from '~~/server/planning/lags'
+import type { LagFilm, LagInput, StepWork } from '~~/server/planning/lags'
 import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import { minutesFrom } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
@@ -20,8 +20,8 @@ const quarter = 15 * 60_000
 type Step = PlanFacts['steps'][number]
 type TurnRow = PlanFacts['turns'][number]
 
-/** A problem with what is needed to read its plan back: instants count from `zeroAt`. */
-export interface StudioProblem { problem: PlanProblem, zeroAt: number, works: StepWork[], hands: Hands[], untested: Set<number>, leftOut: number[] }
+/** A problem with what is needed to read its plan back: instants count from `zeroAt`. `films`: what each lag waits for, by its place among them. */
+export interface StudioProblem { problem: PlanProblem, zeroAt: number, works: StepWork[], hands: Hands[], untested: Set<number>, leftOut: number[], films: (LagFilm | null)[] }
 
 /** The planner's problem of a studio at `now` (ms UTC): every open turn of every piece that anything but a decision can let begin. */
 export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number): StudioProblem {
@@ -33,10 +33,11 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const leftOut = follow(new Set([...found.flatMap(each => [...each.unreachable]), ...refusedWork(works, facts)]), works, lags, hands)
   const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
   const known = new Set(planned.flatMap(work => work.turns.map(turn => activityId(turn.id))))
+  const asked = lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from)))
   const input: PlanInput = {
     activities: planned.flatMap(work => work.turns.map(turn => activity(work.step, turn, handsFor(work, facts, toCome, hands)))),
     resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: each.open })), ...placesOf(facts)],
-    lags: lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from))),
+    lags: asked,
     rests: restsOf(planned, facts, lags, known),
     apart: [...apartOf(planned), ...vapourApart(planned, facts, toCome)],
     families: familiesOf(planned),
@@ -45,7 +46,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     horizon: horizonDays * 24 * 60,
     previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
   }
-  return { problem: planProblem(input), zeroAt, works: planned, hands, untested: new Set(found.flatMap(each => [...each.untested])), leftOut: [...leftOut] }
+  return { problem: planProblem(input), zeroAt, works: planned, hands, untested: new Set(found.flatMap(each => [...each.untested])), leftOut: [...leftOut], films: asked.map(lag => lag.film ?? null) }
 }
 
 function worksOf(facts: PlanFacts): StepWork[] {
@@ -161,7 +162,7 @@ function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): N
   }
   return [...batches].map(([batchId, own]) => {
     const row = pieces.get(own[0]?.step.pieceId ?? 0)
-    return { id: `batch ${batchId}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
+    return { id: `batch ${batchId}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), release: Math.max(0, minutesFrom(zeroAt, row?.startsAt ?? zeroAt, Math.ceil)), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
   })
 }
 

@@ -1,4 +1,5 @@
 import { airOf, roomAirs } from '~~/server/work/air'
+import { benchesOf } from '~~/server/work/benches'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { materialsToCome } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
@@ -8,7 +9,9 @@ import type { Database } from '~~/server/utils/database'
 import { roomClock } from '#shared/drying/clock'
 import type { RoomClock } from '#shared/drying/clock'
 import { predictCoat } from '#shared/drying/predict'
-import type { CoatPrediction, DryingMaterial, MilestonePrediction } from '#shared/drying/types'
+import type { AirSpan } from '#shared/drying/ladder'
+import type { PreparedMaterial } from '#shared/drying/material'
+import type { CoatCase, CoatPrediction, MilestonePrediction } from '#shared/drying/types'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName, Risk } from '#shared/terms'
 
@@ -39,12 +42,15 @@ export function metAt(rungs: readonly MilestonePrediction[], milestone: Mileston
   return rung ? reachedAt(rung, risk, since) : { at: since, promised: true }
 }
 
+/** A film as it would go on now: what it is, how it goes on, and the air it would stand in. */
+export interface FilmToCome { key: string, material: PreparedMaterial, coat: CoatCase, spans: AirSpan[] }
+
 /**
  * How long coats that are still to come will have to wait, as if each went on now in the room its piece stands in.
  * One prediction for each material, room, coat and ground, kept for the length of one plan.
  */
 export class WaitsToCome {
-  readonly #materials: Map<number, DryingMaterial>
+  readonly #benches: ReturnType<typeof benchesOf>
   readonly #clocks = new Map<number | null, RoomClock>()
   readonly #kept = new Map<string, CoatPrediction>()
   readonly #clockOf: (roomId: number | null) => RoomClock
@@ -52,7 +58,7 @@ export class WaitsToCome {
   readonly shut: ReadonlyMap<number, ShutRoom>
 
   constructor(db: Database, facts: PlanFacts, readonly now: number) {
-    this.#materials = dryingMaterials(db, facts.owner.id, materialsToCome(facts))
+    this.#benches = benchesOf(db, facts.owner.id, dryingMaterials(db, facts.owner.id, materialsToCome(facts)))
     const airs = roomAirs(db, facts.owner, now)
     this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
@@ -67,14 +73,21 @@ export class WaitsToCome {
     return { minutes: at === null ? null : minutesFrom(this.now, at, Math.ceil), promised, windows }
   }
 
-  #predict(step: PlanFacts['steps'][number], roomId: number | null): CoatPrediction | null {
-    const material = step.materialVersionId === null ? undefined : this.#materials.get(step.materialVersionId)
+  /** The film that a coat of this step would leave were it put on now, by a material as this bench has it; null where nothing dries. */
+  film(step: PlanFacts['steps'][number], roomId: number | null): FilmToCome | null {
+    const material = step.materialVersionId === null ? null : this.#benches.materialFor(step.materialVersionId, 0, [])
     if (!material) return null
-    const key = `${step.materialVersionId} ${roomId} ${step.coatSize} ${step.ground}`
     const clock = this.#clocks.get(roomId) ?? this.#clockOf(roomId)
     this.#clocks.set(roomId, clock)
-    const kept = this.#kept.get(key) ?? predictCoat(preparedMaterials.prepare(material), { appliedAt: this.now, size: step.coatSize, ground: step.ground }, [{ clock, fromAt: this.now, toAt: null }], { now: this.now })
-    this.#kept.set(key, kept)
+    const key = `${step.materialVersionId} ${roomId} ${step.coatSize} ${step.ground}`
+    return { key, material, coat: { appliedAt: this.now, size: step.coatSize, ground: step.ground }, spans: [{ clock, fromAt: this.now, toAt: null }] }
+  }
+
+  #predict(step: PlanFacts['steps'][number], roomId: number | null): CoatPrediction | null {
+    const film = this.film(step, roomId)
+    if (!film) return null
+    const kept = this.#kept.get(film.key) ?? predictCoat(film.material, film.coat, film.spans, { now: this.now })
+    this.#kept.set(film.key, kept)
     return kept
   }
 }

@@ -51,14 +51,15 @@ function repeated(db: Database, studioId: number, actId: number): Started | Refu
   return { ok: true, batchId: row.id, pieceIds: pieces.map(each => each.id), repeated: true }
 }
 
-function newestVersion(tx: Transaction, studioId: number, scheduleId: number): number | null {
+/** The edition of a schedule that a batch would start with now; null when there is none. */
+export function newestVersion(tx: Database | Transaction, studioId: number, scheduleId: number): number | null {
   const row = tx.select({ id: scheduleVersion.id }).from(scheduleVersion).innerJoin(finishingSchedule, eq(finishingSchedule.id, scheduleVersion.scheduleId))
     .where(scoped(scheduleVersion, studioId, eq(scheduleVersion.scheduleId, scheduleId), isNull(finishingSchedule.archivedAt))).orderBy(desc(scheduleVersion.no)).get()
   return row?.id ?? null
 }
 
 /** The edition of its material that each step starts with: the newest there is. */
-function newestMaterials(tx: Transaction, studioId: number, edition: ScheduleEdition): Record<string, number> {
+export function newestMaterials(tx: Database | Transaction, studioId: number, edition: ScheduleEdition): Record<string, number> {
   const ids = [...new Set(edition.steps.flatMap(step => step.materialId ?? []))]
   if (ids.length === 0) return {}
   const versions = tx.select().from(materialVersion).where(scoped(materialVersion, studioId, inArray(materialVersion.materialId, ids))).orderBy(desc(materialVersion.no)).all()

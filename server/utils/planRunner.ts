@@ -20,6 +20,8 @@ export interface RunOptions {
   seed?: number
   /** Plans built or changed at most; without it as many as there is time for. */
   schedules?: number
+  /** Milliseconds for this search instead of the runner's own. */
+  millis?: number
   /** Told the first plan at once; the answer is the best. */
   onFirst?: (plan: Plan, broken: readonly Violation[]) => void
 }
@@ -52,14 +54,14 @@ export class PlanRunner {
   }
 
   /** Of problems with one key the last one wins: an older one, waiting or being solved, ends as superseded. Never rejects. */
-  run(key: string, problem: PlanProblem, { seed = 1, schedules, onFirst }: RunOptions = {}): Promise<PlanResult> {
+  run(key: string, problem: PlanProblem, { seed = 1, schedules, millis = this.millis, onFirst }: RunOptions = {}): Promise<PlanResult> {
     if (this.closed) return Promise.resolve(shut)
     this.waiting.get(key)?.settle(superseded)
     this.waiting.delete(key)
     if (this.current?.key === key) Atomics.store(new Int32Array(this.current.request.cancel), 0, 1)
     return new Promise((settle) => {
       const most = schedules ?? (this.file ? Infinity : schedulesHere)
-      this.waiting.set(key, { key, settle, onFirst, request: { id: ++this.count, problem, seed, schedules: most, millis: this.millis, cancel: new SharedArrayBuffer(4) } })
+      this.waiting.set(key, { key, settle, onFirst, request: { id: ++this.count, problem, seed, schedules: most, millis, cancel: new SharedArrayBuffer(4) } })
       this.next()
     })
   }

@@ -69,6 +69,13 @@ function weighed(rungs: readonly (readonly Posterior[])[]): number[] {
   return raw.map(w => w / all)
 }
 
+/** Of what a bench's tests leave in doubt about a rung, the share that all its coats have in common, 0..1; the rest is each coat's own. `parts` as `learnBench` made them. */
+export function benchShare(parts: readonly { weight: number, variance: number }[]): number {
+  const all = parts.reduce((sum, part) => sum + part.weight * part.variance, 0)
+  const own = parts.reduce((sum, part, d) => sum + part.weight * Math.min(part.variance, (divisions[d]?.coat ?? 0) ** 2), 0)
+  return all > 0 ? 1 - own / all : 0
+}
+
 /** How much longer than the sheet the tested rungs take, each counting by the share of its doubt that tests have taken away. */
 function speedBand(rungs: readonly { scale: SheetScale, own: readonly Posterior[] }[], weights: readonly number[]): SpeedBand {
   let all = 0
