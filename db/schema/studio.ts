@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
-import { flag, id, instant, oneOf, studioKey, within } from './columns'
+import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { fireCallKinds, roles, stepKinds } from '#shared/terms'
 import type { Role, StepKind } from '#shared/terms'
 
@@ -88,6 +88,16 @@ export const wallLink = sqliteTable('wall_link', {
   madeAt: instant('made_at').notNull(),
   revokedAt: instant('revoked_at'),
 }, t => [studioKey(t)])
+
+/** A secret address at which a calendar reads somebody's planned work. One at a time; with them it goes. */
+export const calendarLink = sqliteTable('calendar_link', {
+  id: id(),
+  studioId: studioColumn(),
+  memberId: integer('member_id').notNull(),
+  tokenHash: text('token_hash').notNull().unique(),
+  everybody: flag('everybody').notNull(),
+  madeAt: instant('made_at').notNull(),
+}, t => [studioKey(t), belongsTo(t, t.memberId, member), unique().on(t.memberId)])
 
 export const benchTablet = sqliteTable('bench_tablet', {
   id: id(),

@@ -84,6 +84,12 @@ export const routes: Record<string, RouteCase> = {
   'places/index.post.ts': { least: 'maker', apart: 'named', body: place },
   'places/[id].patch.ts': { least: 'maker', apart: 'row', at: 'place', body: () => ({ capacity: 8 }) },
   'places/[id].delete.ts': { least: 'maker', apart: 'row', at: 'place' },
+  'calendar/index.get.ts': { least: 'helper', apart: 'view' },
+  'calendar/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ everybody: false }) },
+  // Everybody ends their own address and nobody another's.
+  'calendar/index.delete.ts': { least: 'helper', apart: 'view', asLeast: 404 },
+  // The secret opens it to whoever holds it: that is what it is for.
+  'calendar/[token].get.ts': { least: 'anyone', apart: 'none', at: 'calendarToken' },
   'calls/index.get.ts': { least: 'helper', apart: 'view' },
   'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
 

@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, subscription: number, material: number, invitationToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, subscription: number, material: number, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -51,6 +51,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const closure = await made(owner, '/api/closures', { memberId: null, name: `${marker} holiday`, fromDate: '2030-05-01', toDate: '2030-05-03' })
   const invitation = await made(owner, '/api/invitations', { role: 'helper', email: `${marker.toLowerCase()}@example.test` })
   const wall = await made(owner, '/api/wall-links', { name: `${marker} tablet` })
+  const calendar = await owner.put<{ path: string }>('/api/calendar', { everybody: true })
   const members = await owner.get<{ id: number, role: string }[]>('/api/members')
   const helper = members.body.find(({ role }) => role === 'helper')
   if (!helper) throw new Error('The first studio has no helper.')
@@ -70,7 +71,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   if (!material) throw new Error('The first studio has no material.')
   const calls = writeCalls(databaseFile, room.id, seen.body.actId, piece)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */
