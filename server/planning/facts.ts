@@ -28,7 +28,7 @@ export type PlanFacts = NonNullable<ReturnType<typeof readPlanFacts>>
 /** The newest live film of each step with its times: what the next step waits for. */
 function readFilms(db: Database, studioId: number) {
   const live = scoped(coat, studioId, isNull(coat.settledAt), isNull(coat.strippedAt))
-  const films = db.select({ coatId: coat.id, stepId: turn.stepId, versionId: coat.materialVersionId, endedAt: coat.endedAt }).from(coat).innerJoin(turn, eq(turn.id, coat.turnId)).where(live).orderBy(asc(coat.endedAt)).all()
+  const films = db.select({ coatId: coat.id, pieceId: coat.pieceId, kind: coat.kind, stepId: turn.stepId, versionId: coat.materialVersionId, endedAt: coat.endedAt }).from(coat).innerJoin(turn, eq(turn.id, coat.turnId)).where(live).orderBy(asc(coat.endedAt)).all()
   const rungs = db.select({ prediction }).from(coat).innerJoin(prediction, eq(prediction.coatId, coat.id)).where(live).orderBy(asc(prediction.ordinal)).all().map(row => row.prediction)
   const windows = db.select({ window: windowPrediction }).from(coat).innerJoin(windowPrediction, eq(windowPrediction.coatId, coat.id)).where(live).orderBy(asc(windowPrediction.ordinal)).all().map(row => row.window)
   const recoveries = db.select({ versionId: recoatWindow.versionId, name: recoatWindow.recovery, minutes: recoatWindow.recoveryMin }).from(recoatWindow).where(scoped(recoatWindow, studioId)).all()

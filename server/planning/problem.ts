@@ -3,6 +3,7 @@ import type { Hands } from '~~/server/planning/hands'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId, lagsOf } from '~~/server/planning/lags'
 import type { LagFilm, LagInput, StepWork } from '~~/server/planning/lags'
+import { dustApart, dustKeptOff } from '~~/server/planning/dust'
 import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import { minutesFrom } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
@@ -29,7 +30,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt, zeroAt + horizonDays * 24 * 60 * 60_000)
   const works = worksOf(facts)
   const found = byPiece(works).map(own => lagsOf(own, facts, toCome, zeroAt))
-  const lags = [...found.flatMap(each => each.lags), ...keptOut(works, facts, toCome.shut, zeroAt)]
+  const lags = [...found.flatMap(each => each.lags), ...keptOut(works, facts, toCome.shut, hands, zeroAt), ...dustKeptOff(works, facts, zeroAt)]
   const leftOut = follow(new Set([...found.flatMap(each => [...each.unreachable]), ...refusedWork(works, facts)]), works, lags, hands)
   const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
   const known = new Set(planned.flatMap(work => work.turns.map(turn => activityId(turn.id))))
@@ -39,7 +40,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: each.open })), ...placesOf(facts)],
     lags: asked,
     rests: restsOf(planned, facts, lags, known),
-    apart: [...apartOf(planned), ...vapourApart(planned, facts, toCome)],
+    apart: [...dustApart(planned, toCome), ...vapourApart(planned, facts, toCome)],
     families: familiesOf(planned),
     jobs: jobsOf(planned, facts, zeroAt),
     fixed: fixedOf(planned, facts, toCome, hands, zeroAt),
@@ -87,9 +88,8 @@ const turnOf = (id: string | null | undefined) => (id ? Number(id.slice(1)) : nu
 
 /** In a shut room only its equipped operator goes on with the same solvent work. */
 function handsFor(work: StepWork, facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[]): readonly Hands[] {
-  const operatorId = operatorOf(work, facts, toCome.shut)
-  const own = hands.filter(each => each.memberId === operatorId && each.may(work.step.kind))
-  return own.length >= Math.max(1, work.step.hands) ? own : hands
+  const operator = operatorOf(work, facts, toCome.shut, hands)
+  return operator ? [operator] : hands
 }
 
 function activity(step: Step, turn: TurnRow, hands: readonly Hands[]): PlanInput['activities'][number] {
@@ -118,21 +118,6 @@ function restsOf(works: readonly StepWork[], facts: PlanFacts, lags: readonly La
     const after = release ? activityId(release.id) : lags.find(lag => last && lag.from === activityId(last.id) && known.has(lag.to))?.to
     if (!last) return release ? [{ from: null, to: activityId(release.id), uses }] : []
     return after ? [{ from: activityId(last.id), to: after, uses }] : []
-  })
-}
-
-/** Much dust settles for half an hour before a film may lie in the same room (planning value); a film minds it while it is being laid and an hour after. */
-const settling = 30
-const openFilm = 60
-
-function apartOf(works: readonly StepWork[]): NonNullable<PlanInput['apart']> {
-  const rooms = new Map<number, StepWork[]>()
-  for (const work of works) if (work.roomId !== null) rooms.set(work.roomId, [...rooms.get(work.roomId) ?? [], work])
-  return [...rooms].flatMap(([roomId, own]) => {
-    const members = (wanted: (step: Step) => boolean, after: number) => own.filter(work => wanted(work.step)).flatMap(work => work.turns.filter(turn => turn.kind === 'work').map(turn => ({ activity: activityId(turn.id), after })))
-    const one = members(step => step.dust === 'much', settling)
-    const other = members(step => step.kind === 'coat', openFilm)
-    return one.length > 0 && other.length > 0 ? [{ id: `dust ${roomId}`, one, other }] : []
   })
 }
 

@@ -1,6 +1,7 @@
 import { eq, isNull, notInArray } from 'drizzle-orm'
 import { keepOut, materialVersion, room } from '~~/db/schema'
 import type { PlanFacts } from '~~/server/planning/facts'
+import type { Hands } from '~~/server/planning/hands'
 import { activityId } from '~~/server/planning/lags'
 import type { LagInput, StepWork } from '~~/server/planning/lags'
 import { minutesFrom } from '~~/server/planning/waits'
@@ -39,9 +40,11 @@ export function readShut(db: Database, studioId: number, now: number): Map<numbe
 
 const isSolvent = ({ step }: StepWork, facts: PlanFacts) => (step.kind === 'coat' || step.kind === 'glue-up') && step.materialVersionId !== null && facts.vapour.solventVersions.has(step.materialVersionId)
 
-/** The one person who may go on with solvent coats in a shut room, or null where the room is open or the work is another. */
-export function operatorOf(work: StepWork, facts: PlanFacts, shut: ReadonlyMap<number, ShutRoom>): number | null {
-  return work.roomId !== null && isSolvent(work, facts) ? shut.get(work.roomId)?.operatorId ?? null : null
+/** The hands of the one person who may go on with solvent coats in a shut room; null where the room is open, the work is another, or more hands than theirs are needed: nobody else is equipped. */
+export function operatorOf(work: StepWork, facts: PlanFacts, shut: ReadonlyMap<number, ShutRoom>, hands: readonly Hands[]): Hands | null {
+  if (work.roomId === null || work.step.hands > 1 || !isSolvent(work, facts)) return null
+  const operatorId = shut.get(work.roomId)?.operatorId ?? null
+  return hands.find(each => each.memberId === operatorId && each.may(work.step.kind)) ?? null
 }
 
 /** Solvent work where somebody sleeps gets no start at all. */
@@ -50,10 +53,10 @@ export function refusedWork(works: readonly StepWork[], facts: PlanFacts): numbe
 }
 
 /** Nobody is sent into a shut room before it can be expected to be opened, but its equipped operator. A floor for the plan: a person opens the room. */
-export function keptOut(works: readonly StepWork[], facts: PlanFacts, shut: ReadonlyMap<number, ShutRoom>, zeroAt: number): LagInput[] {
+export function keptOut(works: readonly StepWork[], facts: PlanFacts, shut: ReadonlyMap<number, ShutRoom>, hands: readonly Hands[], zeroAt: number): LagInput[] {
   return works.flatMap((work) => {
     const line = work.roomId === null ? undefined : shut.get(work.roomId)
-    if (!line || operatorOf(work, facts, shut) !== null) return []
+    if (!line || operatorOf(work, facts, shut, hands) !== null) return []
     const min = line.clearAt === null ? unknownMin : Math.max(lookInMin, minutesFrom(zeroAt, line.clearAt, Math.ceil))
     return work.turns.filter(turn => turn.status === 'waiting').map(turn => ({ from: null, to: activityId(turn.id), min }))
   })

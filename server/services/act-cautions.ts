@@ -41,7 +41,8 @@ function refuseMovingIn(tx: Transaction, studioId: number, request: ActRequest, 
 /** What nobody has tested counts as there: no sanding, scraping, piercing, cutting, and no heat. */
 function refuseOldObject(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>): Refusal | null {
   const heats = request.kind === 'air' && body.kind === 'warm air'
-  if (!heats && !(beginning.includes(request.kind) && loosening.some(kind => kind === kindOfStep(tx, studioId, request, body)))) return null
+  const scrapes = request.kind === 'stripped'
+  if (!heats && !scrapes && !(beginning.includes(request.kind) && loosening.some(kind => kind === kindOfStep(tx, studioId, request, body)))) return null
   const open = tx.select({ pieceId: intake.pieceId, question: intake.question }).from(intake)
     .where(scoped(intake, studioId, inArray(intake.pieceId, request.pieces.map(each => each.id)), inArray(intake.answer, ['open', 'not tested', 'tested, found']))).get()
   if (!open) return null

@@ -3,6 +3,7 @@ import { act, part } from '~~/db/schema'
 import { actingOf, checkTime, parseActBody } from '~~/server/services/acts'
 import type { Recorded, Teller } from '~~/server/services/acts'
 import { refuseByCaution } from '~~/server/services/act-cautions'
+import { refuseNewSolventWork } from '~~/server/services/vapour-starts'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -14,7 +15,7 @@ import { insertAct, piecesOf, subjectsOf } from '~~/server/work/record'
 import { refold } from '~~/server/work/refold'
 import { may } from '#shared/permissions'
 import { actBodies } from '#shared/schemas/act'
-import type { CorrectionRequest, TellableKind } from '#shared/schemas/act'
+import type { ActRequest, CorrectionRequest, TellableKind } from '#shared/schemas/act'
 import { actRefusals } from '#shared/words/acts'
 
 type ActRow = typeof act.$inferSelect
@@ -38,7 +39,7 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
     const subjects = correctedSubjects(tx, studioId, old, was, request, now)
     if (isRefusal(subjects)) return subjects
     const doneAt = request.doneAt === undefined ? old.doneAt : Date.parse(request.doneAt)
-    const caution = request.takeBack ? null : refuseCorrected(tx, studioId, teller, old, body, subjects, now)
+    const caution = request.takeBack ? null : refuseCorrected(tx, studioId, teller, { old, body, was, subjects }, now)
     if (caution) return caution
     const rootId = old.rootActId ?? old.id
     const newId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: old.kind, doneAt, toldAt: now, acting: actingOf(teller), body: { ...body }, subjects, replaces: { id: old.id, rootId }, voided: request.takeBack ?? false })
@@ -59,12 +60,18 @@ function findRefusal(tx: Transaction, studioId: number, teller: Teller, old: Act
   return times.map(at => checkTime(at, now)).find(refusal => refusal !== null) ?? null
 }
 
-/** What a caution refuses at an act it refuses at its correction: no wet solvent film is corrected into a bedroom. The three answers were given with the act. */
-function refuseCorrected(tx: Transaction, studioId: number, teller: Teller, old: ActRow, body: Record<string, unknown>, subjects: readonly Subject[], now: number): Refusal | null {
+interface Corrected { old: ActRow, body: Record<string, unknown>, was: readonly Subject[], subjects: readonly Subject[] }
+
+/** What a caution refuses at an act it refuses at its correction: no wet solvent film is corrected into a bedroom. The three answers were given with the act, for what it was. */
+function refuseCorrected(tx: Transaction, studioId: number, teller: Teller, { old, body, was, subjects }: Corrected, now: number): Refusal | null {
   if (old.kind === 'began') return null
-  const ids = piecesOf(tx, studioId, subjects.map(each => each.partId))
-  const request = { clientKey: old.clientKey, kind: old.kind as TellableKind, doneAt: new Date(old.doneAt).toISOString(), pieces: ids.map(id => ({ id, version: 1 })), partIds: subjects.map(each => each.partId), body, vapour: { exhaust: 'running' as const, flamesOff: true, nobodyElse: true } }
-  return refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
+  const asTold = (of: readonly Subject[], said: Record<string, unknown>): ActRequest => ({
+    clientKey: old.clientKey, kind: old.kind as TellableKind, doneAt: new Date(old.doneAt).toISOString(), pieces: piecesOf(tx, studioId, of.map(each => each.partId)).map(id => ({ id, version: 1 })),
+    partIds: of.map(each => each.partId), body: said, vapour: { exhaust: 'running', flamesOff: true, nobodyElse: true },
+  })
+  const becomes = asTold(subjects, body)
+  return refuseByCaution(tx, studioId, actingOf(teller).memberId, becomes, body, now)
+    ?? refuseNewSolventWork(tx, studioId, { request: asTold(was, old.body), body: old.body }, { request: becomes, body })
 }
 
 /** The subjects moved by as much as the act is, put onto other pieces, or timed one by one. */

@@ -20,6 +20,7 @@ export const startVapour = {
   unanswered: 'Answer all three first.',
   flamesOn: 'Put out flames and pilot lights, and switch off heaters and motors first. Then say it again.',
   somebodyThere: 'Wait till the others have left the room. Then say it again.',
+  tellAnew: 'That makes it solvent work, or puts it in another room, and three things are asked first. Take this act back and tell the work anew.',
   sleptIn: (room: string) => `Somebody sleeps in ${room}, or it shares its air with a bedroom. No solvent work and no wet solvent film in there. Choose another room.`,
   keepOut: (room: string, name: string) => name === '' ? `${room} is shut: keep out till an owner has opened it.` : `${room} is shut: keep out till ${name} or an owner has opened it.`,
   isocyanate: (material: string) => `${material} holds isocyanate. An owner must first state in writing how it is used here and what is worn. The page for air and fire takes it.`,
