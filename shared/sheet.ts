@@ -2,11 +2,14 @@ import { filmsOf, standings } from '#shared/board'
 import type { Standing } from '#shared/board'
 import { dryness } from '#shared/dryness'
 import type { StudioState } from '#shared/schemas/piece-state'
+import { briefCautions, briefDeferral } from '#shared/library/brief-cautions'
+import { solventRooms } from '#shared/solvent-rooms'
+import { clockTime } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { ReadPiece } from '#shared/verdict/piece'
 import type { VerdictKind } from '#shared/verdict/types'
 import { groupNames } from '#shared/words/group'
-import { sheetKeepOut, sheetWords } from '#shared/words/sheet'
+import { sheetKeepOut, sheetRags, sheetVapour, sheetWords } from '#shared/words/sheet'
 import { betterText, limitTexts, verdictReason, verdictTitle } from '#shared/words/verdict'
 
 /** Pieces alike at one place: one drawing, one verdict, and what goes with it, a line each. */
@@ -14,7 +17,9 @@ export interface SheetCell { key: string, names: string, dry: number | null, kin
 
 export interface SheetShelf { key: number, name: string, room: string, cells: SheetCell[] }
 
-export interface HandlingSheet { rooms: { id: number, name: string }[], shelves: SheetShelf[], keepOuts: { id: number, head: string, says: string }[] }
+export interface HandlingSheet { rooms: { id: number, name: string }[], shelves: SheetShelf[], keepOuts: SheetLine[], cautions: SheetLine[] }
+
+interface SheetLine { id: number, head: string, says: string }
 
 /** Reasons that the verdict's own words, or a line of the page, say already. */
 const said = ['dry', 'grip wet', 'cut off']
@@ -42,6 +47,17 @@ function cellsOf(stood: readonly Standing[], clock: Clock): SheetCell[] {
   }))
 }
 
+/** Fire first: rags that nobody has answered for, then the rooms with a wet solvent film in one line, whichever room is read. */
+function cautionsOf(state: StudioState, pieces: readonly ReadPiece[], clock: Clock): SheetLine[] {
+  const wet = solventRooms(pieces.map(read => read.piece), clock.now)
+  const rooms = state.rooms.filter(room => wet.has(room.id))
+  const keys = ['flames', ...rooms.some(room => !room.outdoor) ? ['vapour'] : [], ...rooms.some(room => room.sprayArea) ? ['phones'] : []]
+  return [
+    ...state.rags.map(duty => ({ id: -duty.id, ...sheetRags(duty.room, clockTime(duty.sinceAt, clock)) })),
+    ...rooms.length > 0 ? [{ id: 0, ...sheetVapour(rooms.map(room => room.name), [...briefCautions(keys), briefDeferral]) }] : [],
+  ]
+}
+
 /**
  * What hands may do, shelf by shelf as they stand before the reader. Every shut room is named, whichever room is read.
  * @param roomId only what stands in this room; null for all of them
@@ -55,6 +71,7 @@ export function handlingSheet(state: StudioState, pieces: readonly ReadPiece[], 
   return {
     rooms: state.rooms.map(({ id, name }) => ({ id, name })),
     shelves: [...shelves, { key: 0, name: sheetWords.nowhere, room: '', cells: nowhere }].filter(each => each.cells.length > 0),
+    cautions: cautionsOf(state, pieces, clock),
     keepOuts: state.rooms.flatMap(room => room.keepOut ? [{ id: room.id, ...sheetKeepOut(room.name, room.keepOut.opensBy) }] : []),
   }
 }

@@ -49,6 +49,34 @@ export function airflowText(flowM3PerHour: number, units: Units): string {
   return units === 'us' ? `${figure(cfm(flowM3PerHour), 0)} cfm` : `${figure(flowM3PerHour, 0)} m³/h`
 }
 
+/** A figure that is asked for is rounded up; so little over a step is no reason for the next (a share of the figure, planning value). */
+const hair = 0.005
+
+/**
+ * Rounded up to two significant figures, never below `least`: 1435 is 1500, 260.4 is 260, 0 is `least`. What is asked for is never rounded down by more
+ * than half a per cent, nor up by more than a tenth above `10 * least`. @param value 0 or more
+ */
+export function roundedUp(value: number, least: number): number {
+  if (value <= least) return least
+  const step = Math.max(least, 10 ** (Math.floor(Math.log10(value)) - 1))
+  return Number((Math.ceil(value * (1 - hair) / step) * step).toPrecision(12))
+}
+
+/**
+ * The air that a room asks for, m3/h, in the studio's unit, in the other, and in air changes where the room's volume (m3) is known, each rounded up by
+ * itself: "260 m³/h (160 cfm), 6.5 air changes an hour".
+ */
+export function neededAirText(flowM3PerHour: number, volumeM3: number | null, units: Units): string {
+  const [metric, us] = [neededFlowText(flowM3PerHour, 'metric'), neededFlowText(flowM3PerHour, 'us')]
+  const changes = volumeM3 === null ? '' : `, ${roundedUp(flowM3PerHour / volumeM3, 0.1)} air changes an hour`
+  return `${units === 'us' ? `${us} (${metric})` : `${metric} (${us})`}${changes}`
+}
+
+/** Air that is asked for, in the studio's unit alone, rounded up: "260 m³/h". */
+export function neededFlowText(flowM3PerHour: number, units: Units): string {
+  return units === 'us' ? `${roundedUp(cfm(flowM3PerHour), 1)} cfm` : `${roundedUp(flowM3PerHour, 1)} m³/h`
+}
+
 /** What somebody typed in the studio's units, in °C. */
 export function toCelsius(value: number, units: Units): number {
   return units === 'us' ? celsius(value) : value

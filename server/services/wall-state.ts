@@ -3,13 +3,14 @@ import { sheetWords } from '#shared/words/sheet'
 
 /**
  * The studio as a wall link may see it: what a verdict is read from, and nothing beyond. Orders, batches, materials and
- * mixes, minutes, plans and people stay inside; the one name that is told is of whoever opens a shut room.
+ * mixes, minutes, plans and people stay inside; the one name that is told is of whoever opens a shut room. Oily rags nobody has
+ * answered for are told: they burn whoever reads of them.
  */
 export function wallState(state: StudioState): StudioState {
   return {
     ...state,
     rooms: state.rooms.map(room => ({ ...room, air: null, waterSpeed: null, keepOut: room.keepOut && { ...room.keepOut, operatorId: null } })),
-    pieces: state.pieces.map(wallPiece), sessions: [], rags: [], hours: [],
+    pieces: state.pieces.map(wallPiece), sessions: [], hours: [],
   }
 }
 

@@ -190,13 +190,17 @@ const work = {
   },
 } satisfies Record<string, CautionText>
 
-const texts = { ...health, ...fire, ...work }
+const texts = { ...fire, ...health, ...work }
 
 export type CautionKey = keyof typeof texts
-export interface Caution extends CautionText { key: CautionKey }
+/** What a caution is about: what can burn, what can harm, or only the work itself. */
+export type CautionTopic = 'fire' | 'health' | 'work'
+export interface Caution extends CautionText { key: CautionKey, topic: CautionTopic }
+
+const topicOf = (key: CautionKey): CautionTopic => key in fire ? 'fire' : key in health ? 'health' : 'work'
 
 /** Every caution the library knows. Show `cautionDeferral` once after any selection of them. */
-export const cautions: readonly Caution[] = (Object.keys(texts) as CautionKey[]).map(key => ({ key, ...texts[key] }))
+export const cautions: readonly Caution[] = (Object.keys(texts) as CautionKey[]).map(key => ({ key, topic: topicOf(key), ...texts[key] }))
 
 /** A caution by key, or null when the word is not one of ours (a studio's own row may hold any). */
 export function findCaution(key: string): Caution | null {

@@ -1,4 +1,4 @@
-import type { MilestonePrediction } from '#shared/drying/types'
+import type { MilestonePrediction, ReasonCode } from '#shared/drying/types'
 import type { ActLine, StepLine } from '#shared/schemas/piece-detail'
 import { clockTime, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
@@ -74,17 +74,30 @@ export const pieceWords = {
 /** "Gone out Tue 9:00." for a piece that has left. */
 export const goneText = (at: number, clock: Clock) => `Gone out ${clockTime(at, clock)}.`
 
-/** When a film comes to a rung, with its doubt: "likely 14:20, give it till 15:05". */
-export function rungText(rung: MilestonePrediction, clock: Clock): string {
+const whyUnsure = (reason: ReasonCode | null) => (reason === null ? 'too unsure to promise' : predictionReason(reason))
+
+/** When a film comes to a rung, with its doubt: "likely 14:20, give it till 15:05". @param said a reason that stands beside the rungs already */
+export function rungText(rung: MilestonePrediction, clock: Clock, said: ReasonCode | null = null): string {
   const { likelyAt, p90At, reachedAt, reason } = rung
   if (reachedAt !== null) return `so since ${clockTime(reachedAt, clock)}: tested by hand`
-  const why = reason === null ? 'too unsure to promise' : predictionReason(reason)
-  if (likelyAt === null) return `${why}: only after a touch test`
+  const why = reason !== null && reason === said ? '' : whyUnsure(reason)
+  if (likelyAt === null) return [why, 'only after a touch test'].filter(Boolean).join(': ')
   const doubt = p90At === null ? undefined : Math.max(p90At - likelyAt, Math.abs(likelyAt - clock.now) / 4)
   const likely = likelyAt <= clock.now ? 'likely by now' : `likely ${roughTime(likelyAt, clock, 'up', doubt)}`
-  if (p90At === null) return `${likely}; ${why}: test it`
+  if (p90At === null) return why === '' ? `${likely}; test it` : `${likely}; ${why}: test it`
   return p90At <= clock.now ? `since ${roughTime(p90At, clock, 'up', doubt)}` : `${likely}, give it till ${roughTime(p90At, clock, 'up', doubt)}`
 }
+
+/** The one reason for which two rungs or more of a film have no promise, to be said once above them; null where each has its own, or none. */
+export function sharedReason(rungs: readonly MilestonePrediction[]): ReasonCode | null {
+  const open = rungs.filter(rung => rung.reachedAt === null && rung.reason !== null)
+  const count = (reason: ReasonCode | null) => open.filter(rung => rung.reason === reason).length
+  const [most] = [...open].sort((a, b) => count(b.reason) - count(a.reason))
+  return most && count(most.reason) > 1 ? most.reason : null
+}
+
+/** "Below the material's minimum temperature." */
+export const reasonSentence = (reason: ReasonCode) => asSentence(predictionReason(reason))
 
 /** "window open till 15:05", "window opens 13:40, shuts 15:05", "window shut at 12:10". */
 export function windowText({ opensAt, shutsAt }: { opensAt: number | null, shutsAt: number | null }, clock: Clock): string {

@@ -6,7 +6,7 @@ export const roomWords = {
   shut: (room: string) => `Keep out of ${room}`,
   since: (time: string, name: string | null) => name === null ? `Shut since ${time}. A maker opens it.` : `Shut since ${time}. ${name} opens it, or an owner.`,
   open: (room: string) => `Open ${room}`,
-  ask: 'Open it only after looking in yourself, with the exhaust run as the product’s data sheet and local rules ask.',
+  ask: 'Look in yourself first, with the exhaust on. Follow the data sheet and your local rules. If in doubt, leave it shut.',
   nothingToShut: (room: string) => `${room} was not opened in the last day, so there is nothing to take back.`,
   shutAgain: (room: string) => `Shut ${room} again`,
   openedBy: (room: string, name: string | null, time: string) => name === null ? `${room} was opened ${time}.` : `${name} opened ${room} ${time}.`,

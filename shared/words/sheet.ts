@@ -1,3 +1,6 @@
+import { briefCautions } from '#shared/library/brief-cautions'
+import { listText } from '#shared/words/group'
+
 /** What the handling sheet says by itself; it is read from the far side of a room. */
 export const sheetWords = {
   title: 'What may be handled',
@@ -21,6 +24,16 @@ export const sheetWords = {
   turn: 'Turn by itself',
   page: (page: number, of: number) => `${page} of ${of}`,
 } as const
+
+/** "Spray room and Bench: wet solvent film." with what it asks for, in two pieces. */
+export function sheetVapour(rooms: readonly string[], brief: readonly string[]): { head: string, says: string } {
+  return { head: `${listText(rooms)}: wet solvent film.`, says: brief.map(each => `${each}.`).join(' ') }
+}
+
+/** "Oily rags in Bench since 13:40." and what is still to be said, in two pieces. */
+export function sheetRags(room: string, since: string): { head: string, says: string } {
+  return { head: `Oily rags in ${room} since ${since}: nobody has said where they are.`, says: `${briefCautions(['oily rags'])[0]}.` }
+}
 
 /** "Spray room: keep out." and who opens it, in two pieces. No time: none may read as leave to enter. */
 export function sheetKeepOut(room: string, opensBy: string | null): { head: string, says: string } {

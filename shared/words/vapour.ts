@@ -5,7 +5,7 @@ import type { AirMove } from '#shared/terms'
 import { clockTime } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { Units } from '#shared/units'
-import { airflowText, volumeText } from '#shared/units'
+import { airflowText, neededFlowText, volumeText } from '#shared/units'
 import { grouped } from '#shared/grouped'
 import { groupNames, listText } from '#shared/words/group'
 
@@ -76,6 +76,7 @@ export const vapourWords = {
   usesOurs: 'no sheet read: ours stand in',
   usesSheet: 'own figures',
   inUse: 'in use',
+  moreSheets: (count: number) => count === 1 ? '1 more material with solvent in it' : `${count} more materials with solvent in them`,
   solvent: 'Solvent',
   limit: 'Limit over eight hours',
   ceiling: 'Limit over a quarter of an hour',
@@ -86,6 +87,8 @@ export const vapourWords = {
   touch: 'Touch-dry',
   sheetHint: 'Empty where the sheet says nothing.',
   cautions: 'Standing cautions',
+  topics: { fire: 'Fire', health: 'Breath and skin', work: 'What spoils the work' },
+  onThisPage: 'On this page',
   basis: 'Rests on',
   scope: 'Goes for',
   rules: 'Rules of this studio',
@@ -157,9 +160,13 @@ export function roundly(value: number): string {
 
 /** "351 mg/m³", or "351 to 480 mg/m³" where the figures are in doubt. */
 export function amountText(likely: number, cautious: number): string {
-  const [low, high] = [roundly(Math.min(likely, cautious)), roundly(Math.max(likely, cautious))]
-  return low === high ? `${low} mg/m³` : `${low} to ${high} mg/m³`
+  const [low, high] = [Math.min(likely, cautious), Math.max(likely, cautious)]
+  if (high < leastShown) return `under ${leastShown} mg/m³`
+  return roundly(low) === roundly(high) ? `${roundly(high)} mg/m³` : `${low < leastShown ? '0' : roundly(low)} to ${roundly(high)} mg/m³`
 }
+
+/** No sum of a room's air is good to less than this, mg/m3; nor does it come to nothing. */
+const leastShown = 0.01
 
 /** A share of a limit: "0.9 of its limit", "2.7 times its limit". */
 export function shareText(share: number): string {
@@ -188,7 +195,7 @@ export function assumedText(sums: RoomSums): string | null {
 export function leverTexts(levers: Levers | null, units: Units, clock: Clock): string[] {
   if (!levers) return []
   return [
-    ...levers.exhaustM3PerHour === null ? [] : [`An exhaust rated for vapour that moves ${airflowText(levers.exhaustM3PerHour, units)}.`],
+    ...levers.exhaustM3PerHour === null ? [] : [`An exhaust rated for vapour that moves ${neededFlowText(levers.exhaustM3PerHour, units)}.`],
     ...levers.atMost === null ? [] : [`At most ${levers.atMost} of these coats at once.`],
     ...levers.rooms.length === 0 ? [] : [`Another place: ${listText(levers.rooms)}.`],
     ...levers.after === null ? [] : [`A later hour: what is wet now counts till ${clockTime(levers.after, clock)} at least.`],

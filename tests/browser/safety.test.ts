@@ -48,6 +48,7 @@ describe('the air of a room, from its set-up to its opening', () => {
     await page.getByRole('button', { name: 'Keep it' }).click()
     await spray(page).getByText('40 m³, exhaust 160 m³/h').waitFor()
 
+    await page.getByText(/^\d+ more materials with solvent in them$/).click()
     await page.getByRole('button', { name: 'Data sheet of Nitrocellulose lacquer' }).click()
     await page.getByRole('dialog').getByLabel('Solvent', { exact: true }).selectOption({ label: 'Mineral spirits' })
     await fill(page.getByRole('dialog'), { 'VOC, as it is in the can': '450', 'Spread rate': '10', 'Touch-dry': '240', 'Limit over eight hours': '350', 'Limit over a quarter of an hour': '1800', 'Lowest explosive limit': '42' })
@@ -82,7 +83,7 @@ describe('the air of a room, from its set-up to its opening', () => {
     await spray(page).getByText('Strong exhaust, and stay out between tasks.').first().waitFor()
     await spray(page).getByText('104 mg/m³').first().waitFor()
     await spray(page).getByText('0.89 of its limit').first().waitFor()
-    await spray(page).getByText('260 m³/h').first().waitFor()
+    await spray(page).getByText('260 m³/h (160 cfm), 6.5 air changes an hour').first().waitFor()
     await spray(page).getByText('160 m³/h').first().waitFor()
     await spray(page).getByText('An exhaust rated for vapour that moves 260 m³/h.').waitFor()
     await page.getByText(/Wren began solvent work in Spray room, .+\. The exhaust was said to run\./).waitFor()
@@ -123,8 +124,30 @@ describe('the page about air and fire', () => {
     const line = spray(page).getByText('Keep out of Spray room')
     // 34 pt is 45 px: more than the 29 px that a ten-inch tablet needs at three metres.
     expect(await line.evaluate(element => Number.parseFloat(getComputedStyle(element).fontSize))).toBeGreaterThanOrEqual(40)
+    // On paper a pixel is 1/96 of an inch: capitals, seven tenths of that, are at least 8 mm high, and three metres ask for 6 (a two-hundredth of the way is half of it).
+    const capitalMm = 0.7 * await line.evaluate(element => Number.parseFloat(getComputedStyle(element).fontSize)) * 25.4 / 96
+    expect(capitalMm).toBeGreaterThanOrEqual(8)
+    const pdf = await page.pdf({ format: 'A4' })
+    expect(pdf.subarray(0, 5).toString()).toBe('%PDF-')
+    const pages = pdf.toString('latin1').match(/\/Type\s*\/Page\b/g)?.length ?? 0
+    expect(pages).toBeGreaterThanOrEqual(1)
+    expect(pages).toBeLessThanOrEqual(6)
+    // Nothing is wider than the paper: 210 mm less a centimetre on either side is 718 px.
+    await page.setViewportSize({ width: 718, height: 1000 })
+    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(718)
     expect(await page.getByRole('button', { name: 'Print this sheet' }).isVisible()).toBe(false)
     expect(await page.getByText('Follow the product\'s safety data sheet and your local rules.').first().isVisible()).toBe(true)
+  }, 120_000)
+
+  it('is short enough to be read on a phone, and its standing cautions are one press away', async () => {
+    const { page } = await openPage(browser, server.origin, {}, owner)
+    await visit(page, '/safety')
+    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390)
+    await page.getByRole('navigation', { name: 'On this page' }).getByRole('link', { name: 'Standing cautions' }).click()
+    const top = await page.getByRole('heading', { name: 'Standing cautions' }).evaluate(element => element.getBoundingClientRect().top)
+    expect(top).toBeGreaterThanOrEqual(0)
+    expect(top).toBeLessThan(200)
+    expect(await page.getByRole('button', { name: /^Data sheet of Shellac$/ }).isVisible()).toBe(false)
   }, 120_000)
 
   it('keeps the studio\'s own rules and the owner\'s statement', async () => {

@@ -117,6 +117,18 @@ describe('the handling sheet', () => {
     expect(handlingSheet(state, readAll(state, noon), clock, 1).keepOuts).toEqual([{ id: 2, head: 'Spray room: keep out.', says: 'Mara opens it.' }])
     expect(handlingSheet(state, readAll(state, noon), clock, 2).shelves).toEqual([])
   })
+  it('warns of oily rags first, then of the rooms with a wet solvent film in one line, whichever room is read', () => {
+    const wet = { ...filmState(), solventBorne: true }
+    const state = studioWith([pieceState(1, 'Ledger 1', [groupState(1, 1, [wet])])])
+    state.rooms = [{ ...state.rooms[0]!, sprayArea: true }, { ...state.rooms[0]!, id: 2, name: 'Hall' }]
+    state.rags = [{ id: 7, roomId: 2, room: 'Hall', sinceAt: at(9) }]
+    expect(handlingSheet(state, readAll(state, noon), clock, 2).cautions).toEqual([
+      { id: -7, head: 'Oily rags in Hall since 9:00: nobody has said where they are.', says: 'Rags burn: flat outdoors or in the water can.' },
+      { id: 0, head: `${state.rooms[0]!.name}: wet solvent film.`, says: 'No flames, no sparks. No phones in the spray room. Exhaust on. Read the data sheet.' },
+    ])
+    const dry = studioWith(ledgers(1))
+    expect(handlingSheet(dry, readAll(dry, noon), clock, null).cautions).toEqual([])
+  })
   it('pages by whole rows', () => {
     // Rows of 300 in a box of 650: two to a page; a row of 700 has one to itself.
     const rows = [0, 300, 600].map(top => ({ top, height: 300 }))

@@ -5,7 +5,13 @@ import { libraryMaterials } from '#shared/library/index'
 import { librarySchedules } from '#shared/library/schedules'
 import { systemRules } from '#shared/library/systems'
 import { startVapour } from '#shared/words/vapour-starts'
-import { bandText, fireText, vapourWords } from '#shared/words/vapour'
+import { bandText, fireText, vapourRefusals, vapourWords } from '#shared/words/vapour'
+import { briefCautions } from '#shared/library/brief-cautions'
+import { callWords } from '#shared/words/calls'
+import { pieceWords } from '#shared/words/piece'
+import { roomWords } from '#shared/words/rooms'
+import { wallForm } from '#shared/words/settings-page'
+import { sheetVapour } from '#shared/words/sheet'
 import { readingAge } from './reading-age'
 
 const carries = (keys: readonly CautionKey[], wanted: readonly CautionKey[]) => wanted.filter(key => !keys.includes(key))
@@ -72,10 +78,18 @@ describe('their reading age', () => {
   })
 
   it('is twelve or below for what the page about air and fire asks and warns of, and for what is asked before solvent work', () => {
+    const filled = [
+      callWords.rags.body('the bench room', '14:10'), callWords.rags.again('the bench room', '14:10'), callWords.vapour.body('the spray room', 'Moss', true), callWords.vapour.body('the spray room', null, false),
+      callWords.checkRoom.body('the spray room', 'Moss'), startVapour.ask('the spray room'), startVapour.sleptIn('the attic'), startVapour.keepOut('the spray room', 'Moss'), startVapour.isocyanate('This glue'), startVapour.oldObject('The dresser', 'lead not ruled out'),
+      roomWords.since('14:10', 'Moss'), vapourWords.started('Moss', 'the spray room', '14:10', true), wallForm.spray('the spray room'), sheetVapour(['Spray room'], briefCautions(['flames', 'vapour', 'phones'])).says, pieceWords.intakeTested, pieceWords.oldSays,
+    ]
     const words = (value: unknown): string[] => typeof value === 'string' ? [value] : typeof value === 'object' && value !== null ? Object.values(value).flatMap(words) : []
-    const sentences = [...words(bandText), ...words(fireText), ...words(startVapour), ...words(vapourWords)].filter(text => text.split(' ').length >= 8)
-    expect(sentences.length).toBeGreaterThan(15)
+    const said = [...words(bandText), ...words(fireText), ...words(startVapour), ...words(vapourWords), ...words(roomWords), ...words(vapourRefusals), ...filled]
+    const sentences = said.filter(text => text.split(' ').length >= 8)
+    expect(sentences.length).toBeGreaterThan(30)
     expect(sentences.filter(text => readingAge(text) > 12)).toEqual([])
+    // Fewer than eight words are too few to measure: they are short by themselves.
+    for (const text of said) expect(Math.max(0, ...text.split(/[.:;?,]\s/).map(part => part.split(' ').length)), text).toBeLessThanOrEqual(24)
   })
 })
 

@@ -58,9 +58,13 @@ describe('what a look at the board asks the database', () => {
 describe('what a wall link is told', () => {
   const { state } = lookAt(4)
   const told = wallState(state)
+  it('is told of oily rags that nobody has answered for, by room and hour', () => {
+    const rags = [{ id: 3, roomId: 1, room: 'Bench', sinceAt: 0 }]
+    expect(wallState({ ...state, rags }).rags).toEqual(rags)
+  })
   it('keeps orders, batches, materials, minutes and the plan inside', () => {
     expect(told.pieces.map(({ order, batch }) => [order, batch.name])).toEqual(told.pieces.map(() => [null, '']))
     expect(new Set(told.pieces.flatMap(piece => piece.groups.flatMap(group => group.films.map(film => film.material))))).toEqual(new Set(['']))
-    expect([told.sessions, told.rags, told.hours, told.rooms.map(room => room.air)]).toEqual([[], [], [], told.rooms.map(() => null)])
+    expect([told.sessions, told.hours, told.rooms.map(room => room.air)]).toEqual([[], [], told.rooms.map(() => null)])
   })
 })

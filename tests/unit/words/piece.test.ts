@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { ActLine } from '#shared/schemas/piece-detail'
 import { studioZone } from '#shared/time'
-import { fateText, originText, problemText, rungText, toldText, waitsForText, wasText, whenText, windowText } from '#shared/words/piece'
+import { fateText, originText, problemText, reasonSentence, rungText, sharedReason, toldText, waitsForText, wasText, whenText, windowText } from '#shared/words/piece'
 
 const at = (time: string) => Date.parse(`2026-04-07T${time}:00Z`)
 const clock = { now: at('14:00'), zone: studioZone('UTC') }
@@ -21,6 +21,22 @@ describe('a rung', () => {
   it('without a promise asks for a test and says why', () => {
     expect(rungText(rung({ likelyAt: at('14:20'), reason: 'too-damp' }), clock)).toBe('likely 14:20; too damp to promise: test it')
     expect(rungText(rung({ reason: 'never' }), clock)).toBe('no end in sight in this air: only after a touch test')
+  })
+})
+
+describe('the reason of several rungs', () => {
+  const cold = { likelyAt: at('14:20'), reason: 'below-minimum' }
+  it('is said once for the film, and no more at each rung', () => {
+    const rungs = [rung(cold), rung({ ...cold, likelyAt: at('16:00') }), rung({ likelyAt: at('18:00'), reason: 'too-damp' })]
+    const why = sharedReason(rungs)
+    expect(why && reasonSentence(why)).toBe('Below the material’s minimum temperature.'.replace('’', '\''))
+    expect(rungs.map(each => rungText(each, clock, why))).toEqual(['likely 14:20; test it', 'likely 16:00; test it', 'likely 18:00; too damp to promise: test it'])
+    expect(rungText(rung({ reason: 'below-minimum' }), clock, why)).toBe('only after a touch test')
+  })
+  it('is not drawn together where only one rung has it, or a hand has told', () => {
+    expect(sharedReason([rung(cold), rung({ likelyAt: at('15:00'), p90At: at('15:10') })])).toBeNull()
+    expect(sharedReason([rung(cold), rung({ ...cold, reachedAt: at('13:00') })])).toBeNull()
+    expect(sharedReason([])).toBeNull()
   })
 })
 
