@@ -8,7 +8,7 @@ export interface SwatchRun<Swatch extends StandingPiece = StandingPiece> { key: 
 export const longestRun = 12
 
 function saysTheSame(a: StandingPiece, b: StandingPiece): boolean {
-  return a.series === b.series && a.suffix === b.suffix && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone
+  return a.series === b.series && a.suffix === b.suffix && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone && (a.was ?? null) === (b.was ?? null)
 }
 
 /**

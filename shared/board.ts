@@ -1,5 +1,6 @@
 import { dryness } from '#shared/dryness'
 import type { FilmState, PlaceState, RoomState, StudioState } from '#shared/schemas/piece-state'
+import type { MovedTurn } from '#shared/plan-moves'
 import type { StandingPiece } from '#shared/shelf'
 import type { Clock } from '#shared/time'
 import { aboutToShutMs } from '#shared/verdict/begin'
@@ -7,6 +8,7 @@ import type { ReadGroup, ReadPiece } from '#shared/verdict/piece'
 import type { Verdict } from '#shared/verdict/types'
 import { groupVerdict } from '#shared/verdict/verdict'
 import { airText, keepOutText, partsSuffix, swatchText, takenText } from '#shared/words/board'
+import { wasText } from '#shared/words/plan-moves'
 import { groupNames } from '#shared/words/group'
 import { momentText } from '#shared/words/moments'
 import { betterText } from '#shared/words/verdict'
@@ -57,12 +59,18 @@ function momentOf({ piece, verdict, whole }: Standing, clock: Clock): Pick<Stand
 }
 
 /** One swatch for what stands of a piece at a place. */
-export function standingCell(standing: Standing, clock: Clock): BoardCell {
+export function standingCell(standing: Standing, clock: Clock, moved: ReadonlyMap<number, MovedTurn>): BoardCell {
   const { piece, verdict, name, suffix } = standing
   return {
     key: piece.piece.id, name: name + suffix, pieceName: name, suffix, series: piece.piece.batch.id, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock),
-    ...momentOf(standing, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
+    ...momentOf(standing, clock), was: wasOf(piece, moved, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
   }
+}
+
+/** Where the plan had the next turn of a piece before it moved it. */
+function wasOf({ turns }: ReadPiece, moved: ReadonlyMap<number, MovedTurn>, clock: Clock): string | null {
+  const [first] = turns.flatMap(({ turn }) => moved.get(turn.turnId) ?? []).sort((a, b) => a.isAt - b.isAt)
+  return first ? wasText(first, clock) : null
 }
 
 const nameStem = (name: string) => name.replace(/\s+\d+$/, '')
@@ -70,7 +78,7 @@ const tenth = (dry: number | null) => dry === null ? null : Math.round(dry * 10)
 
 /** Whether two swatches beside one another say the same of two pieces of one series. */
 function isAlike(a: BoardCell, b: BoardCell): boolean {
-  return nameStem(a.pieceName) === nameStem(b.pieceName) && a.suffix === b.suffix && a.kind === b.kind && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone && tenth(a.dry) === tenth(b.dry)
+  return nameStem(a.pieceName) === nameStem(b.pieceName) && a.suffix === b.suffix && a.kind === b.kind && a.verdict === b.verdict && a.moment === b.moment && a.tone === b.tone && a.was === b.was && tenth(a.dry) === tenth(b.dry)
 }
 
 const wetter = (a: number | null, b: number | null) => a === null || b === null ? null : Math.min(a, b)
@@ -107,9 +115,10 @@ function hasWaterDrying(stood: readonly Standing[], now: number): boolean {
  */
 export function drawBoard(state: StudioState, pieces: readonly ReadPiece[], clock: Clock, unfolded: ReadonlySet<number> = new Set()): BoardDrawing {
   const stood = standings(pieces)
+  const moved = new Map(state.moved.map(each => [each.turnId, each]))
   const many = [...stood.values()].reduce((sum, each) => sum + each.length, 0) >= foldFrom.studio
   const place = (row: PlaceState): BoardPlace => {
-    const cells = (stood.get(row.id) ?? []).map(standing => standingCell(standing, clock))
+    const cells = (stood.get(row.id) ?? []).map(standing => standingCell(standing, clock, moved))
     const folds = many || cells.length > foldFrom.place
     const drawn = folds && !unfolded.has(row.id) ? foldCells(cells) : cells
     return { id: row.id, name: row.name, kind: row.kind, drawn: drawnAs(row.kind), note: takenText(row), free: Math.max(0, row.capacity - row.taken), cells: drawn, unfolded: folds && unfolded.has(row.id) && foldCells(cells).length < cells.length }
@@ -119,7 +128,7 @@ export function drawBoard(state: StudioState, pieces: readonly ReadPiece[], cloc
     const speed = hasWaterDrying(places.flatMap(each => stood.get(each.id) ?? []), clock.now) ? row.waterSpeed : null
     return { id: row.id, name: row.name, air: airText(row.air, speed, state.studio.units, clock.now), keepOut: row.keepOut ? keepOutText(row.keepOut.opensBy) : null, places: places.map(place) }
   }
-  const nowhere = (stood.get(0) ?? []).map(standing => standingCell(standing, clock))
+  const nowhere = (stood.get(0) ?? []).map(standing => standingCell(standing, clock, moved))
   return { rooms: state.rooms.map(room), nowhere: many ? foldCells(nowhere) : nowhere }
 }
 

@@ -18,6 +18,8 @@ export interface StandingPiece {
   moment: string | null
   /** How the next moment is said: plain, a step that may begin, or one whose last moment is near. */
   tone: 'plain' | 'open' | 'shutting'
+  /** Where its next turn was planned before the plan moved it noticeably: "was 15:40"; left out when it did not move of late. */
+  was?: string | null
   /** So many pieces alike beside one another, drawn once; a press shows them one by one. */
   count?: number
 }

@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
 import { milestoneNames, planStatuses } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
+import type { MoveCause } from '#shared/plan-moves'
 import { belongsTo, flag, id, instant, oneOf, studioKey, within } from './columns'
 import { place, room } from './places'
 import { member, studioColumn } from './studio'
@@ -36,7 +37,7 @@ export const windowPrediction = sqliteTable('window_prediction', {
   shutsAt: instant('shuts_at'),
 }, t => [primaryKey({ columns: [t.coatId, t.ordinal] }), belongsTo(t, t.coatId, coat)])
 
-/** Somebody fixed this turn's time. Pins outlive plans. */
+/** Somebody fixed this turn's time: when, who said so, and whose hands. Pins outlive plans; those of one moment belong together. */
 export const pin = sqliteTable('pin', {
   id: id(),
   studioId: studioColumn(),
@@ -44,7 +45,9 @@ export const pin = sqliteTable('pin', {
   startsAt: instant('starts_at').notNull(),
   memberId: integer('member_id'),
   actId: integer('act_id'),
-}, t => [studioKey(t), belongsTo(t, t.turnId, turn), within(t, t.memberId, member), within(t, t.actId, act)])
+  madeAt: instant('made_at'),
+  madeByMemberId: integer('made_by_member_id'),
+}, t => [studioKey(t), belongsTo(t, t.turnId, turn), within(t, t.memberId, member), within(t, t.actId, act), within(t, t.madeByMemberId, member)])
 
 export const plan = sqliteTable('plan', {
   id: id(),
@@ -70,7 +73,7 @@ export const planSession = sqliteTable('plan_session', {
   setupMin: integer('setup_min').notNull(),
 }, t => [studioKey(t), belongsTo(t, t.planId, plan), within(t, t.roomId, room)])
 
-/** `dueAt` is the first planned start that nobody has spoken to: re-planning carries it on, so that silence stays visible. `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. */
+/** `dueAt` is the first planned start that nobody has spoken to: re-planning carries it on, so that silence stays visible. `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. `readyAt` is when what it waits for lets it begin; `toldAt` the start that people last heard of. */
 export const planEntry = sqliteTable('plan_entry', {
   studioId: studioColumn(),
   planId: integer('plan_id').notNull(),
@@ -84,11 +87,14 @@ export const planEntry = sqliteTable('plan_entry', {
   firstFew: integer('first_few'),
   lastStartFewAt: instant('last_start_few_at'),
   afterTest: flag('after_test').notNull().default(false),
+  readyAt: instant('ready_at'),
+  toldAt: instant('told_at'),
 }, t => [
   primaryKey({ columns: [t.planId, t.turnId] }), belongsTo(t, t.planId, plan), belongsTo(t, t.turnId, turn), within(t, t.sessionId, planSession), within(t, t.memberId, member),
   check('plan_entry_span', sql`${t.startsAt} <= ${t.endsAt}`), index('plan_entry_when').on(t.planId, t.startsAt),
 ])
 
+/** Where the plan lets a part lie, and for how long; what finds no single place has no row. */
 export const planHold = sqliteTable('plan_hold', {
   id: id(),
   studioId: studioColumn(),
@@ -99,6 +105,7 @@ export const planHold = sqliteTable('plan_hold', {
   toAt: instant('to_at'),
 }, t => [studioKey(t), belongsTo(t, t.planId, plan), within(t, t.partId, part), within(t, t.placeId, place)])
 
+/** A turn that lies noticeably elsewhere than people last heard; carried from plan to plan while it is fresh. */
 export const planChange = sqliteTable('plan_change', {
   id: id(),
   studioId: studioColumn(),
@@ -106,5 +113,6 @@ export const planChange = sqliteTable('plan_change', {
   turnId: integer('turn_id').notNull(),
   wasAt: instant('was_at'),
   isAt: instant('is_at'),
-  why: text('why').notNull(),
+  why: text('why', { mode: 'json' }).$type<MoveCause>().notNull(),
+  movedAt: instant('moved_at'),
 }, t => [studioKey(t), belongsTo(t, t.planId, plan), belongsTo(t, t.turnId, turn), unique().on(t.planId, t.turnId)])

@@ -1,5 +1,5 @@
 import { and, asc, eq, isNull, sql } from 'drizzle-orm'
-import { batch, closure, coat, member, memberStepKind, openHours, order, part, piece, pieceStep, pin, place, plan, planEntry, prediction, recoatWindow, stay, stepLink, stepTarget, studio, turn, windowPrediction } from '~~/db/schema'
+import { batch, closure, coat, member, memberStepKind, openHours, order, part, piece, pieceStep, pin, place, plan, planChange, planEntry, planHold, prediction, recoatWindow, stay, stepLink, stepTarget, studio, turn, windowPrediction } from '~~/db/schema'
 import { readVapourRooms } from '~~/server/planning/vapour'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
@@ -12,7 +12,7 @@ export function readPlanFacts(db: Database, studioId: number) {
   const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
   if (!owner) return null
   const here = and(isNull(piece.goneAt), isNull(batch.closedAt))
-  const pieces = db.select({ id: piece.id, batchId: piece.batchId, sizeUnits: piece.sizeUnits, startsAt: batch.startsAt, dueAt: order.dueAt, weight: order.weight })
+  const pieces = db.select({ id: piece.id, name: piece.name, batchId: piece.batchId, batch: batch.name, sizeUnits: piece.sizeUnits, startsAt: batch.startsAt, dueAt: order.dueAt, weight: order.weight })
     .from(piece).innerJoin(batch, eq(batch.id, piece.batchId)).leftJoin(order, eq(order.id, batch.orderId)).where(scoped(piece, studioId, here)).orderBy(asc(piece.id)).all()
   const openSteps = scoped(pieceStep, studioId, sql`${pieceStep.status} in ('waiting', 'doing', 'resting', 'set aside')`)
   const steps = db.select({ step: pieceStep }).from(pieceStep).innerJoin(piece, eq(piece.id, pieceStep.pieceId)).innerJoin(batch, eq(batch.id, piece.batchId))
@@ -48,8 +48,11 @@ function readHands(db: Database, studioId: number) {
 
 function readLast(db: Database, studioId: number) {
   const last = db.select({ entry: planEntry }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).where(scoped(plan, studioId, sql`${plan.current} = 1`)).all().map(row => row.entry)
+  const inForce = scoped(plan, studioId, sql`${plan.current} = 1`)
+  const lastChanges = db.select({ change: planChange }).from(plan).innerJoin(planChange, eq(planChange.planId, plan.id)).where(inForce).all().map(row => row.change)
+  const lastHolds = db.select({ hold: planHold }).from(plan).innerJoin(planHold, eq(planHold.planId, plan.id)).where(inForce).all().map(row => row.hold)
   const pins = db.select().from(pin).where(scoped(pin, studioId)).all()
-  return { last, pins }
+  return { last, lastChanges, lastHolds, pins }
 }
 
 /** The material editions that coats to come will need times for. */

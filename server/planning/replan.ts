@@ -1,4 +1,5 @@
 import { lastStartsOf } from '~~/server/planning/last-starts'
+import { movesOf } from '~~/server/planning/moves'
 import { missedWindows } from '~~/server/planning/missed-windows'
 import { readPlanFacts } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
@@ -7,6 +8,7 @@ import type { StudioProblem } from '~~/server/planning/problem'
 import { clearPlan, isCurrent, revisionOf, storePlan } from '~~/server/planning/store-plan'
 import { minutesFrom, WaitsToCome } from '~~/server/planning/waits'
 import { solve } from '~~/server/planner/solve'
+import { memberNames } from '~~/server/services/member-names'
 import { tellingListener } from '~~/server/reminders/wanted'
 import { change } from '~~/server/utils/change'
 import type { Database } from '~~/server/utils/database'
@@ -41,13 +43,14 @@ export async function replan(db: Database, studioId: number, now: number, solver
   missedWindows(db, studioId, now)
   const facts = readPlanFacts(db, studioId)
   if (!facts) return { ok: false, reason: 'no studio', message: `There is no studio ${studioId}.` }
-  const given = studioProblem(facts, new WaitsToCome(db, facts, now), now)
+  const toCome = new WaitsToCome(db, facts, now)
+  const given = studioProblem(facts, toCome, now)
   if (given.problem.activities.length === 0) {
     change(db, studioId, 'plan', tx => clearPlan(tx, studioId))
     tellingListener(db, studioId, now)
     return { ok: true, planned: 0 }
   }
-  const store = (plan: Plan) => keep(db, facts, given, plan, now)
+  const store = (plan: Plan) => keep(db, { facts, given, toCome }, plan, now)
   // A studio without a plan gets the first one at once; one with a plan sees only what is better.
   const solved = await solver(String(studioId), given.problem, (first, broken) => {
     if (facts.last.length === 0 && broken.length === 0) store(first)
@@ -59,11 +62,14 @@ export async function replan(db: Database, studioId: number, now: number, solver
   return { ok: true, planned: plan.entries.length }
 }
 
+interface Planned { facts: PlanFacts, given: StudioProblem, toCome: WaitsToCome }
+
 /** Stores a legal plan and brings the calls in line; false when the studio has changed since its facts were read. */
-function keep(db: Database, facts: PlanFacts, given: StudioProblem, plan: Plan, now: number): boolean {
+function keep(db: Database, { facts, given, toCome }: Planned, plan: Plan, now: number): boolean {
   const studioId = facts.owner.id
+  const moves = movesOf(facts, given, plan, toCome, memberNames(db, studioId), now)
   const lastStarts = lastStartsOf(plan, given, facts, minutesFrom(given.zeroAt, now, Math.floor))
-  const stored = change(db, studioId, 'plan', tx => isCurrent(tx, facts) && storePlan(tx, facts, given, plan, lastStarts, now) > 0)
+  const stored = change(db, studioId, 'plan', tx => isCurrent(tx, facts) && storePlan(tx, facts, given, plan, { lastStarts, moves }, now) > 0)
   if (!stored) return false
   tellingListener(db, studioId, now)
   // All in one go: whatever was committed since the facts were read is the plan itself and its calls.

@@ -1,10 +1,12 @@
 import { eq, sql } from 'drizzle-orm'
-import { plan as planTable, planEntry, planSession } from '~~/db/schema'
+import { plan as planTable, planChange, planEntry, planHold, planSession } from '~~/db/schema'
 import { clashSentences } from '~~/server/planning/clashes'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { familyOf } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
+import { holdsOf } from '~~/server/planning/holds'
 import type { LastStarts } from '~~/server/planning/last-starts'
+import type { Moves } from '~~/server/planning/moves'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import type { Plan } from '#shared/planning/types'
@@ -12,8 +14,11 @@ import type { Plan } from '#shared/planning/types'
 const minute = 60_000
 const rowsAtOnce = 400
 
+/** What goes with a plan into the database. */
+export interface PlanNotes { lastStarts: ReadonlyMap<string, LastStarts>, moves: Moves }
+
 /** Puts a plan in place of the last one. Only the one in force is kept; a silent start is carried on as due. */
-export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProblem, made: Plan, lastStarts: ReadonlyMap<string, LastStarts>, now: number) {
+export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProblem, made: Plan, { lastStarts, moves }: PlanNotes, now: number) {
   const studioId = facts.owner.id
   tx.delete(planTable).where(scoped(planTable, studioId)).run()
   const at = (minutes: number | null) => (minutes === null ? null : given.zeroAt + minutes * minute)
@@ -35,10 +40,17 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
       studioId, planId, turnId, sessionId: entry.session === null ? null : sessionIds[entry.session] ?? null, memberId: entry.resources[0] ? Number(entry.resources[0].slice(1)) : null,
       startsAt, endsAt: given.zeroAt + entry.end * minute, dueAt: due.get(turnId) ?? startsAt,
       lastStartAt: at(last?.lastStart ?? null), firstFew: last?.firstFew ?? null, lastStartFewAt: at(last?.lastStartFew ?? null), afterTest: given.untested.has(turnId),
+      readyAt: moves.readyAt.get(turnId) ?? null, toldAt: moves.toldAt.get(turnId) ?? null,
     }
   })
-  for (let from = 0; from < rows.length; from += rowsAtOnce) tx.insert(planEntry).values(rows.slice(from, from + rowsAtOnce)).run()
+  inParts(rows, part => tx.insert(planEntry).values(part).run())
+  inParts(moves.moves.map(move => ({ studioId, planId, ...move })), part => tx.insert(planChange).values(part).run())
+  inParts(holdsOf(facts, rows, now).map(hold => ({ studioId, planId, ...hold })), part => tx.insert(planHold).values(part).run())
   return planId
+}
+
+function inParts<Row>(rows: readonly Row[], write: (part: Row[]) => void) {
+  for (let from = 0; from < rows.length; from += rowsAtOnce) write(rows.slice(from, from + rowsAtOnce))
 }
 
 /** Planned starts that have passed with nobody saying whether it went on: they stay due until somebody does. */

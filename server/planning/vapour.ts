@@ -24,7 +24,7 @@ const usualTouchMin = 240
 
 /** What a plan must know of rooms and materials so that nobody is sent into vapour. */
 export function readVapourRooms(db: Database, studioId: number) {
-  const rooms = db.select({ id: room.id, sleptIn: room.sleptIn, sprayArea: room.sprayArea, outdoor: room.outdoor }).from(room).where(scoped(room, studioId)).all()
+  const rooms = db.select({ id: room.id, name: room.name, sleptIn: room.sleptIn, sprayArea: room.sprayArea, outdoor: room.outdoor }).from(room).where(scoped(room, studioId)).all()
   const solvents = db.select({ id: materialVersion.id }).from(materialVersion).where(scoped(materialVersion, studioId, notInArray(materialVersion.solvent, ['water', 'none']))).all()
   return { rooms: new Map(rooms.map(row => [row.id, row])), solventVersions: new Set(solvents.map(row => row.id)) }
 }

@@ -6,12 +6,14 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { readShut } from '~~/server/planning/vapour'
 import type { ShutRoom } from '~~/server/planning/vapour'
 import type { Database } from '~~/server/utils/database'
+import { airAt } from '#shared/air/room'
 import { roomClock } from '#shared/drying/clock'
 import type { RoomClock } from '#shared/drying/clock'
 import { predictCoat } from '#shared/drying/predict'
 import type { AirSpan } from '#shared/drying/ladder'
 import type { PreparedMaterial } from '#shared/drying/material'
-import type { CoatCase, CoatPrediction, MilestonePrediction } from '#shared/drying/types'
+import { trackRoom } from '#shared/drying/tools'
+import type { CoatCase, CoatPrediction, MilestonePrediction, RoomAir } from '#shared/drying/types'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName, Risk } from '#shared/terms'
 
@@ -54,12 +56,14 @@ export class WaitsToCome {
   readonly #clocks = new Map<number | null, RoomClock>()
   readonly #kept = new Map<string, CoatPrediction>()
   readonly #clockOf: (roomId: number | null) => RoomClock
+  readonly #airs: Map<number, RoomAir>
   /** Rooms that nobody enters till somebody opens them. */
   readonly shut: ReadonlyMap<number, ShutRoom>
 
   constructor(db: Database, facts: PlanFacts, readonly now: number) {
     this.#benches = benchesOf(db, facts.owner.id, dryingMaterials(db, facts.owner.id, materialsToCome(facts)))
     const airs = roomAirs(db, facts.owner, now)
+    this.#airs = airs
     this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
   }
@@ -71,6 +75,15 @@ export class WaitsToCome {
     const { at, promised } = metAt(prediction.milestones, milestone, risk, this.now)
     const windows = windowed ? prediction.windows.flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(this.now, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(this.now, shutsAt, Math.floor)]])) : []
     return { minutes: at === null ? null : minutesFrom(this.now, at, Math.ceil), promised, windows }
+  }
+
+  /** The coldest that a room is foretold to become between now and an instant (ms UTC, looked at for a week at most), °C; null without a room. */
+  coldest(roomId: number | null, untilAt: number): number | null {
+    const air = roomId === null ? undefined : this.#airs.get(roomId)
+    if (!air) return null
+    const track = trackRoom(preparedMaterials.tools, air, this.now)
+    const hours = Math.max(0, Math.min(7 * 24, Math.ceil((untilAt - this.now) / (60 * minute))))
+    return Math.min(...Array.from({ length: hours + 1 }, (_, ahead) => airAt(track, this.now + ahead * 60 * minute).tempC))
   }
 
   /** The film that a coat of this step would leave were it put on now, by a material as this bench has it; null where nothing dries. */

@@ -1,6 +1,7 @@
 import { asc, eq, isNull, sql } from 'drizzle-orm'
 import { closure, openHours, plan, planSession, ragDuty, room } from '~~/db/schema'
 import { pieceStates } from '~~/server/services/piece-states'
+import { movedTurns } from '~~/server/services/plan-moves'
 import { placeStates, roomStates } from '~~/server/services/room-states'
 import type { StudioRow } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
@@ -24,6 +25,7 @@ export function studioState(db: Database, owner: StudioRow, now: number): Studio
     places: placeStates(db, owner.id),
     pieces,
     sessions: sessionStates(db, owner.id, pieces),
+    moved: movedTurns(db, owner.id, now),
     rags: db.select({ id: ragDuty.id, roomId: ragDuty.roomId, room: room.name, sinceAt: ragDuty.lastOilAt }).from(ragDuty).innerJoin(room, eq(room.id, ragDuty.roomId))
       .where(scoped(ragDuty, owner.id, isNull(ragDuty.answeredAt))).all(),
   }

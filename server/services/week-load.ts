@@ -97,7 +97,7 @@ function secondHands(facts: PlanFacts): (Span & { hands: number })[] {
 }
 
 function placeLoad(facts: PlanFacts, spans: readonly Span[], now: number): PlaceLoad[] {
-  const uses = placeUses(facts, now)
+  const uses = placeUses(facts, facts.last, now)
   const kinds = [...new Set(facts.places.map(place => place.kind))]
   return kinds.map((kind) => {
     const capacity = facts.places.filter(place => place.kind === kind).reduce((sum, place) => sum + place.capacity, 0)

@@ -1,4 +1,5 @@
 import type { MilestonePrediction, WindowPrediction } from '#shared/drying/types'
+import type { MovedTurn } from '#shared/plan-moves'
 import type { DoubtCause, Hold, IntakeQuestion, MilestoneName, Risk, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
 
 // One shape for every screen, feed and message. Instants are ms UTC here; `toWire` makes them ISO 8601 on the way out.
@@ -135,5 +136,7 @@ export interface StudioState {
   places: PlaceState[]
   pieces: PieceState[]
   sessions: SessionState[]
+  /** What the plan moved noticeably of late. */
+  moved: MovedTurn[]
   rags: { id: number, roomId: number, room: string, sinceAt: number }[]
 }

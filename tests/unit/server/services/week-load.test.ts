@@ -75,7 +75,7 @@ describe('the plan against hours and places', () => {
 })
 
 describe('the fullest moment of a day', () => {
-  const use = (pieceId: number, units: number, fromAt: number, toAt: number): Use => ({ kind: 'clamps', pieceId, units, fromAt, toAt })
+  const use = (pieceId: number, units: number, fromAt: number, toAt: number): Use => ({ kind: 'clamps', pieceId, partId: pieceId, units, fromAt, toAt, liesAt: null })
   it('adds what overlaps and lets what follows take over', () => {
     // 3 until 10, then 2: together only at no time. A third of 1 overlaps the first.
     expect(peak([use(1, 3, 0, 10), use(2, 2, 10, 20)], 'clamps', 0, 20)).toBe(3)

@@ -1,0 +1,112 @@
+import { and, eq } from 'drizzle-orm'
+import { describe, expect, it } from 'vitest'
+import { openHours, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
+import { atOnce, replan } from '~~/server/planning/replan'
+import { movedTurns } from '~~/server/services/plan-moves'
+import { predictPieces } from '~~/server/work/predict'
+import { studioZone } from '#shared/time'
+import { likeMoves } from '#shared/plan-moves'
+import { moveText } from '#shared/words/plan-moves'
+import { plannedStudio } from '../../helpers/planned-studio'
+import { hour, minute } from '../../helpers/studio'
+
+// A Tuesday.
+const now = Date.parse('2026-04-07T10:00:00Z')
+type Studio = ReturnType<typeof plannedStudio>
+
+const zone = studioZone('UTC')
+const turnOf = ({ db }: Studio, pieceId: number, key: string) => {
+  const found = db.select({ id: turn.id }).from(turn).innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).where(and(eq(pieceStep.pieceId, pieceId), eq(pieceStep.key, key), eq(turn.kind, 'work'))).get()
+  if (!found) throw new Error(`There is no turn of ${key}.`)
+  return found.id
+}
+const startOf = ({ db }: Studio, turnId: number) => db.select().from(planEntry).where(eq(planEntry.turnId, turnId)).get()?.startsAt ?? 0
+const planAt = async (studio: Studio, at: number) => expect(await replan(studio.db, studio.studioId, at, atOnce)).toMatchObject({ ok: true })
+const movesAt = (studio: Studio, at: number) => movedTurns(studio.db, studio.studioId, at)
+const whyOf = (studio: Studio, turnId: number, at: number) => movesAt(studio, at).find(each => each.turnId === turnId)?.why
+
+/** A box whose lid has its first paint since ten, planned. */
+async function painted() {
+  const studio = plannedStudio(now, 'painted-waxed-box', 1)
+  studio.tell('coat on', now, 'lid-1', studio.pieceIds)
+  await planAt(studio, now + 10 * minute)
+  return { studio, turnLid: turnOf(studio, studio.pieceIds[0] ?? 0, 'turn-lid') }
+}
+
+describe('what moved', () => {
+  it('is nothing when nothing happened', async () => {
+    const { studio } = await painted()
+    await planAt(studio, now + 15 * minute)
+    expect(movesAt(studio, now + 15 * minute)).toEqual([])
+  })
+
+  it('says that a film dries later when the room has turned cold, with the room and how cold it gets', async () => {
+    const { studio, turnLid } = await painted()
+    const was = startOf(studio, turnLid)
+    // 9 °C and damp from 10:20 on: the paint takes far longer, and the room is as cold as it was read.
+    studio.db.insert(reading).values({ studioId: studio.studioId, roomId: studio.rooms.bench, at: now + 20 * minute, toldAt: now + 20 * minute, tempC: 9, rh: 0.75, source: 'note' }).run()
+    studio.db.transaction(tx => predictPieces(tx, studio.studioId, null, now + 20 * minute))
+    await planAt(studio, now + 20 * minute)
+    const is = startOf(studio, turnLid)
+    expect(is - was).toBeGreaterThan(hour / 2)
+    const why = whyOf(studio, turnLid, now + 20 * minute)
+    expect(why).toMatchObject({ code: 'film later', step: 'First paint on the lid top', room: 'Bench', tempC: 9 })
+    // It begins no sooner than the film is ready.
+    expect(why?.code === 'film later' && why.readyAt <= is && why.readyAt > was).toBe(true)
+    const [told] = likeMoves(movesAt(studio, now + 20 * minute).filter(each => each.turnId === turnLid))
+    expect(moveText(told ?? [], { now: now + 20 * minute, zone }, 'metric')).toMatch(/^Turning over of Box 1 moves from .* to .*: Bench falls to 9 °C, and first paint on the lid top is not dry enough before .*\.$/)
+  })
+
+  it('is told for two hours, against what was first told, and goes when the turn comes back', async () => {
+    const { studio, turnLid } = await painted()
+    const { db, studioId } = studio
+    const was = startOf(studio, turnLid)
+    // Planned for Wednesday at noon: from 13:00 today on within a day. Pinned an hour later, then an hour more.
+    const [one, two, three] = [now + 3 * hour, now + 3 * hour + 5 * minute, now + 3 * hour + 10 * minute]
+    expect(was - one).toBeLessThan(24 * hour)
+    db.insert(pin).values({ studioId, turnId: turnLid, startsAt: was + hour, madeAt: now, madeByMemberId: studio.members.maker.id }).run()
+    await planAt(studio, one)
+    expect(movesAt(studio, one).find(each => each.turnId === turnLid)).toMatchObject({ wasAt: was, isAt: was + hour, why: { code: 'pinned', by: 'The maker' } })
+    db.update(pin).set({ startsAt: was + 2 * hour }).run()
+    await planAt(studio, two)
+    expect(movesAt(studio, two).find(each => each.turnId === turnLid)).toMatchObject({ wasAt: was, isAt: was + 2 * hour })
+    expect(movesAt(studio, two + 2 * hour)).toEqual([])
+    db.update(pin).set({ startsAt: was }).run()
+    await planAt(studio, three)
+    expect(movesAt(studio, three).some(each => each.turnId === turnLid)).toBe(false)
+  })
+
+  it('counts small shifts together against what people last heard', async () => {
+    const { studio, turnLid } = await painted()
+    const { db, studioId } = studio
+    const was = startOf(studio, turnLid)
+    db.insert(pin).values({ studioId, turnId: turnLid, startsAt: was + 20 * minute }).run()
+    await planAt(studio, now + 3 * hour)
+    // Twenty minutes are not told; twenty more make forty, which are.
+    expect(whyOf(studio, turnLid, now + 3 * hour)).toBeUndefined()
+    db.update(pin).set({ startsAt: was + 40 * minute }).run()
+    await planAt(studio, now + 3 * hour + 5 * minute)
+    expect(db.select().from(planChange).where(eq(planChange.turnId, turnLid)).get()).toMatchObject({ wasAt: was, isAt: was + 40 * minute })
+  })
+
+  it('says that nobody works then when hours were taken away', async () => {
+    const studio = plannedStudio(now, 'oiled-bowl', 1)
+    await planAt(studio, now)
+    const first = studio.db.select().from(planEntry).all().sort((a, b) => a.startsAt - b.startsAt)[0]
+    // The rest of Tuesday is closed.
+    studio.db.update(openHours).set({ toMin: 10 * 60 }).where(eq(openHours.weekday, 2)).run()
+    await planAt(studio, now + minute)
+    expect(whyOf(studio, first?.turnId ?? 0, now + minute)).toEqual({ code: 'hours', name: null })
+  })
+
+  it('does not tell a start that went by in silence', async () => {
+    const studio = plannedStudio(now, 'oiled-bowl', 1)
+    await planAt(studio, now)
+    const first = studio.db.select().from(planEntry).all().sort((a, b) => a.startsAt - b.startsAt)[0]
+    await planAt(studio, now + 6 * hour)
+    expect(startOf(studio, first?.turnId ?? 0)).toBeGreaterThanOrEqual(now + 6 * hour)
+    expect(whyOf(studio, first?.turnId ?? 0, now + 6 * hour)).toBeUndefined()
+    // What follows it is told, with that cause.
+    expect(movesAt(studio, now + 6 * hour).map(({ why }) => why.code === 'follows' ? why.because?.code : why.code)).toContain('not told')
+  })
+})
