@@ -35,7 +35,7 @@ export function factsWithBatch(db: Database, facts: PlanFacts, given: BatchToCom
     const base = unreal + (i + 1) * room
     const parts = keys.map((part, k): SeedPart => ({ id: base + k, key: part.key, name: part.name, faces: part.faces.map((face, n) => ({ id: base + 100 + k * 20 + n, key: face.key })) }))
     const { steps, links } = seedOf(parts, edition, materials)
-    added.pieces.push({ id: base, batchId: batchToCome, sizeUnits: given.sizeUnits, startsAt: given.startsAt, dueAt: given.dueAt, weight: 1 })
+    added.pieces.push({ id: base, name: '', batchId: batchToCome, batch: '', sizeUnits: given.sizeUnits, startsAt: given.startsAt, dueAt: given.dueAt, weight: 1 })
     added.stays.push(...parts.map(part => ({ partId: part.id, pieceId: base, placeId: given.placeId, roomId })))
     const ids = new Map(steps.map((step, k) => [step.key, base + 200 + k]))
     for (const step of steps) addStep(added, step, studioId, base, ids.get(step.key) ?? 0)
@@ -63,7 +63,7 @@ function pinFirst(facts: PlanFacts, fromAt: number) {
     const turn = facts.turns.find(each => each.stepId === first?.id)
     if (!first || !turn) continue
     at ??= fromAt + first.setupMin * minute
-    facts.pins.push({ id: unreal + facts.pins.length, studioId: facts.owner.id, turnId: turn.id, startsAt: at, memberId: null, actId: null })
+    facts.pins.push({ id: unreal + facts.pins.length, studioId: facts.owner.id, turnId: turn.id, startsAt: at, memberId: null, actId: null, madeAt: null, madeByMemberId: null })
     at += Math.max(1, turn.minutes) * minute
   }
 }
