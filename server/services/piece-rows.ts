@@ -57,13 +57,13 @@ function readParts(db: Reader, studioId: number, only: readonly number[] | null)
     where piece.studio_id = ${studioId} and piece.gone_at is null ${among(sql`piece.id`, only)} order by part.id`)
 }
 
-interface MaterialRow { id: number, name: string, kind: string, solvent: string, mustLieLevel: 0 | 1, glovesUntil: MilestoneName | null }
-const materialColumns: Columns<MaterialRow> = { id: 'version.id', name: 'material.name', kind: 'version.kind', solvent: 'version.solvent', mustLieLevel: 'version.must_lie_level', glovesUntil: 'version.gloves_until' }
+interface MaterialRow { id: number, name: string, kind: string, solvent: string, mustLieLevel: 0 | 1, glovesUntil: MilestoneName | null, cautions: string }
+const materialColumns: Columns<MaterialRow> = { id: 'version.id', name: 'material.name', kind: 'version.kind', solvent: 'version.solvent', mustLieLevel: 'version.must_lie_level', glovesUntil: 'version.gloves_until', cautions: 'version.cautions' }
 
 /** Every edition of every material once, by its number: a few dozen, which hundreds of films and steps point at. */
 function readMaterials(db: Reader, studioId: number) {
   const rows = read(db, materialColumns, sql`from material_version version join material on material.id = version.material_id where version.studio_id = ${studioId}`)
-  return new Map(rows.map(row => [row.id, row]))
+  return new Map(rows.map(({ cautions, ...row }) => [row.id, { ...row, cautions: JSON.parse(cautions) as string[] }]))
 }
 
 interface CoatRow { id: number, pieceId: number, actId: number, kind: CoatKind, versionId: number | null, beganAt: number, endedAt: number, hold: Hold | null, outAt: number | null, stepId: number | null, step: string | null, rungs: string, windows: string, targets: string, doubts: string }

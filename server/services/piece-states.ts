@@ -3,6 +3,7 @@ import { readPieceRows } from '~~/server/services/piece-rows'
 import type { PieceRows } from '~~/server/services/piece-rows'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { grouped } from '#shared/grouped'
+import { stepCautions } from '#shared/library/brief-cautions'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
 import type { FilmState, GroupState, PieceState, TurnState, WaitState } from '#shared/schemas/piece-state'
@@ -143,7 +144,7 @@ function turnState({ row: step, material, turn, all, waits, film, entry, size, p
   const alike = all.filter(each => each.kind === turn.kind)
   return {
     turnId: turn.id, partIds, kind: turn.kind, name: turn.name, no: alike.indexOf(turn) + 1, of: alike.length, status: turn.status,
-    step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough === 1, materialVersionId: step.materialVersionId, material: material?.name ?? null, solventBorne: isSolventBorne(material) },
+    step: { id: step.id, key: step.key, name: step.name, kind: step.kind, origin: step.origin, status: step.status, asideReason: step.asideReason, hold: step.hold, untilEnough: step.untilEnough === 1, materialVersionId: step.materialVersionId, material: material?.name ?? null, solventBorne: isSolventBorne(material), cautions: turn.kind === 'work' ? stepCautions(step.kind, material?.cautions ?? []) : [] },
     setupMin: step.setupMin, pieceMin: turn.kind === 'work' ? step.pieceMin : turn.minutes, cleanMin: step.cleanMin, dust: step.dust, notOnAt: turn.notOnAt,
     doing: turn.status === 'doing' ? { by: names.get(turn.doingMemberId ?? 0) ?? '', sinceAt: turn.beganAt ?? 0 } : null,
     wantedAt: wantedAt(turn, film),

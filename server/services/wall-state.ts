@@ -31,7 +31,7 @@ const speaks = ({ doing, kind, step, plan }: TurnState) => doing !== null || (ki
 function wallTurn(turn: TurnState): TurnState {
   return {
     ...turn, waits: [], setupMin: 0, pieceMin: 0, cleanMin: 0, wantedAt: null,
-    step: { ...turn.step, key: '', asideReason: null, materialVersionId: null, material: null },
+    step: { ...turn.step, key: '', asideReason: null, materialVersionId: null, material: null, cautions: [] },
     doing: turn.doing && { by: sheetWords.somebody, sinceAt: turn.doing.sinceAt },
     plan: turn.plan && { ...turn.plan, memberId: null, sessionId: null, sessionSize: 1, lastStartAt: null, firstFew: null, lastStartFewAt: null },
   }

@@ -1,4 +1,5 @@
 import type { CautionKey } from '#shared/library/cautions'
+import type { StepKind } from '#shared/terms'
 
 /**
  * The cautions that must be read at arm's length from a tag, or across a room from the wall, in a few words; the gravest first. What is not here has
@@ -19,10 +20,20 @@ const brief = {
   'gloves': 'Gloves till cured',
   'part-cured dust': 'No sanding till cured',
   'cyanoacrylate': 'Fume stings; no cotton',
+  'sanding dust': 'Catch the dust, mask on',
 } as const satisfies Partial<Record<CautionKey, string>>
 
 /** The last words of every brief line: what it defers to. */
 export const briefDeferral = 'Read the data sheet'
+
+const sanding: readonly StepKind[] = ['light sanding', 'flat sanding', 'levelling']
+const wet: readonly StepKind[] = ['coat', 'glue-up']
+
+/** The cautions to be read in few words where a step is done: those of what it puts on, and those of its dust. */
+export function stepCautions(kind: StepKind, ofMaterial: readonly string[]): string[] {
+  const keys = sanding.includes(kind) ? ['sanding dust'] : wet.includes(kind) ? ofMaterial.filter(key => key !== 'sanding dust') : []
+  return Object.keys(brief).filter(key => keys.includes(key))
+}
 
 /** The brief lines of some cautions, each once, the gravest first. */
 export function briefCautions(keys: readonly string[]): string[] {
@@ -33,7 +44,7 @@ export function briefCautions(keys: readonly string[]): string[] {
  * One line for a tag: as many of the gravest cautions as `room` letters hold, how many more there are, and what it defers to. Never empty: a tag
  * without a caution of its own still names the data sheet. The gravest is never cut. @param room letters, 40 or more
  */
-export function tagCaution(keys: readonly string[], room = 80): string {
+export function tagCaution(keys: readonly string[], room = 100): string {
   const lines = briefCautions(keys)
   for (let shown = lines.length; shown > 1; shown--) {
     const line = tagLine(lines, shown)

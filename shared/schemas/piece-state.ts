@@ -80,7 +80,8 @@ export interface TurnState {
   no: number
   of: number
   status: TurnStatus
-  step: { id: number, key: string, name: string, kind: StepKind, origin: StepOrigin, status: StepStatus, asideReason: string | null, hold: Hold | null, untilEnough: boolean, materialVersionId: number | null, material: string | null, solventBorne: boolean }
+  /** `cautions`: what to mind where it is done, in the words of the brief cautions. */
+  step: { id: number, key: string, name: string, kind: StepKind, origin: StepOrigin, status: StepStatus, asideReason: string | null, hold: Hold | null, untilEnough: boolean, materialVersionId: number | null, material: string | null, solventBorne: boolean, cautions?: string[] }
   setupMin: number
   pieceMin: number
   cleanMin: number

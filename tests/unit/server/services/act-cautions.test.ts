@@ -180,3 +180,13 @@ describe('rags', () => {
     expect(db.select().from(act).where(eq(act.kind, 'rags answered')).all()).toEqual([])
   })
 })
+
+describe('a step that could be next', () => {
+  it('brings its cautions in few words to whoever does it', () => {
+    const { ids: [one = 0], made, db, studioId } = workshop({ schedule: 'lacquered-instrument' })
+    const next = () => pieceStates(db, studioId, [one])[0]?.turns.map(each => [each.step.key, each.step.cautions]) ?? []
+    expect(next()).toContainEqual(['sand-body', ['sanding dust']])
+    made('work done', one, { step: 'sand-body' })
+    expect(next()).toContainEqual(['seal', ['flames', 'vapour', 'sleeping room']])
+  })
+})
