@@ -118,6 +118,13 @@ export function clockTime(at: number, clock: Clock): string {
   return name.includes(' ') ? name : `${name} ${clockFace(wall.minutes)}`
 }
 
+/** The day of an instant, always with its date: "Tue 8 Dec"; with the year when it is far. */
+export function dateText(at: number, clock: Clock): string {
+  const { date, weekday } = clock.zone.wall(at)
+  const far = Math.abs(at - clock.now) > 300 * dayMs ? ` ${date.slice(0, 4)}` : ''
+  return `${weekdayName(weekday)} ${Number(date.slice(8))} ${monthNames[Number(date.slice(5, 7)) - 1]}${far}`
+}
+
 /** Which way a doubtful time may be rounded: `up` for what lifts ("from", "till"), `down` for what presses ("by"). */
 export type Rounding = 'up' | 'down'
 

@@ -18,6 +18,9 @@ const horizonDays = 90
 /** Starts are given on the quarter of an hour, and nothing is asked for sooner than the next one. */
 const quarter = 15 * 60_000
 
+/** Minute 0 of a problem made at `now`, ms UTC: nothing can be planned before it. */
+export const zeroOf = (now: number) => Math.ceil(now / quarter) * quarter
+
 type Step = PlanFacts['steps'][number]
 type TurnRow = PlanFacts['turns'][number]
 
@@ -26,7 +29,7 @@ export interface StudioProblem { problem: PlanProblem, zeroAt: number, works: St
 
 /** The planner's problem of a studio at `now` (ms UTC): every open turn of every piece that anything but a decision can let begin. */
 export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number): StudioProblem {
-  const zeroAt = Math.ceil(now / quarter) * quarter
+  const zeroAt = zeroOf(now)
   const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt, zeroAt + horizonDays * 24 * 60 * 60_000)
   const works = worksOf(facts)
   const found = byPiece(works).map(own => lagsOf(own, facts, toCome, zeroAt))

@@ -2,6 +2,7 @@ import { studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
 import { lastMoments, leaving, ragCalls, readies } from './causes'
 import { roomChecks, vapourCalls } from './vapour'
+import { slippingCalls } from './promises'
 import { reconcile } from './reconcile'
 import type { Reconciled } from './reconcile'
 import { readCallState } from './state'
@@ -11,7 +12,7 @@ import type { WantedReminder } from './types'
 export function wantedReminders(db: Database, studioId: number, now: number): WantedReminder[] {
   const state = readCallState(db, studioId, now)
   if (!state) return []
-  return [...ragCalls(state, now), ...vapourCalls(state), ...roomChecks(state), ...lastMoments(state, now), ...readies(state, now), ...leaving(state, now)]
+  return [...ragCalls(state, now), ...vapourCalls(state), ...roomChecks(state), ...lastMoments(state, now), ...readies(state, now), ...leaving(state, now), ...slippingCalls(db, studioId, now)]
 }
 
 /** Brings one studio's calls in line with its state. To be called after each new plan, and by the minute tick. */

@@ -1,0 +1,18 @@
+import { searchInWorker } from '~~/server/planning/search'
+import { makePromise } from '~~/server/services/promises'
+import { isRefusal } from '~~/server/utils/errors'
+import { defineStudioHandler } from '~~/server/utils/handler'
+import { idParams } from '#shared/schemas/common'
+import { promiseRequest } from '#shared/schemas/promise'
+import { toWire } from '#shared/schemas/wire'
+
+/** POST /api/batches/[id]/promise: gives a date to whoever ordered it. */
+export default defineStudioHandler({
+  may: 'promise dates',
+  params: idParams,
+  body: promiseRequest,
+  run: async ({ db, studio, params, body, now }) => {
+    const state = await makePromise(db, studio.id, params.id, body, now, searchInWorker)
+    return isRefusal(state) ? state : toWire(state)
+  },
+})

@@ -1,0 +1,16 @@
+import { searchInWorker } from '~~/server/planning/search'
+import { promiseForNew } from '~~/server/services/promises'
+import { isRefusal } from '~~/server/utils/errors'
+import { defineStudioHandler } from '~~/server/utils/handler'
+import { batchToCome } from '#shared/schemas/promise'
+import { toWire } from '#shared/schemas/wire'
+
+/** POST /api/promises/estimate: when a batch would be ready that has not been started. Nothing is stored. */
+export default defineStudioHandler({
+  may: 'promise dates',
+  body: batchToCome,
+  run: async ({ db, studio, member, body, now }) => {
+    const found = await promiseForNew(db, studio.id, member.id, body, now, searchInWorker)
+    return isRefusal(found) ? found : toWire(found)
+  },
+})

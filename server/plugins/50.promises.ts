@@ -1,0 +1,26 @@
+import { defineNitroPlugin } from 'nitropack/runtime'
+import cron from 'node-cron'
+import { studio } from '~~/db/schema'
+import { watchPromises } from '~~/server/planning/promise-watch'
+import { searchInWorker } from '~~/server/planning/search'
+import { tellingListener } from '~~/server/reminders/wanted'
+import { useDatabase } from '~~/server/utils/database'
+import { whenReady } from '~~/server/utils/ready'
+
+/** One studio after another: a promise that begins to slip is called at the next look at the calls. */
+async function lookRound() {
+  const db = useDatabase()
+  for (const { id } of db.select({ id: studio.id }).from(studio).all()) {
+    if (await watchPromises(db, id, Date.now(), searchInWorker) > 0) tellingListener(db, id, Date.now())
+  }
+}
+
+const complain = (error: unknown) => console.error('The promises could not be looked through.', error)
+
+export default defineNitroPlugin((nitro) => {
+  if (import.meta.prerender) return
+  const task = cron.schedule('* * * * *', () => whenReady().then(lookRound).catch(complain), { noOverlap: true, timezone: 'UTC' })
+  nitro.hooks.hook('close', async () => {
+    await task.destroy()
+  })
+})

@@ -1,0 +1,129 @@
+import { eq } from 'drizzle-orm'
+import { describe, expect, it } from 'vitest'
+import { cause, openHours, order, promise, promiseWatch, reminder } from '~~/db/schema'
+import { watchPromises } from '~~/server/planning/promise-watch'
+import { atOnce, replan } from '~~/server/planning/replan'
+import { searchHere } from '~~/server/planning/search'
+import { tellingListener } from '~~/server/reminders/wanted'
+import { startBatch } from '~~/server/services/batches'
+import { changeBasis, readBasis } from '~~/server/services/promise-basis'
+import { makePromise, promiseForNew, promiseState } from '~~/server/services/promises'
+import { hour, minute, testStudio } from '../../../helpers/studio'
+
+// A Tuesday.
+const now = Date.parse('2026-04-07T10:00:00Z')
+const day = 24 * hour
+
+async function studioWith(orderName: string | null = 'Fair') {
+  const studio = testStudio(now)
+  for (let weekday = 1; weekday <= 5; weekday++) studio.db.insert(openHours).values({ studioId: studio.studioId, weekday, fromMin: 8 * 60 + 30, toMin: 17 * 60 }).run()
+  const started = startBatch(studio.db, studio.studioId, { member: studio.members.maker }, {
+    clientKey: 'start-one', name: 'Boxes', scheduleId: studio.scheduleOf('painted-waxed-box'), pieces: ['Box 1', 'Box 2'], sizeUnits: 1,
+    placeId: studio.places.shelf, order: orderName === null ? null : { name: orderName, dueAt: null }, startsAt: new Date(now).toISOString(), oldObject: false,
+  }, now)
+  if (!started.ok) throw new Error(started.message)
+  await replan(studio.db, studio.studioId, now, atOnce)
+  return { ...studio, batchId: started.batchId }
+}
+
+type Studio = Awaited<ReturnType<typeof studioWith>>
+const ask = async ({ db, studioId, batchId }: Studio, at = now) => {
+  const state = await promiseState(db, studioId, batchId, at, searchHere)
+  if ('ok' in state || !state.estimate) throw new Error('A batch that is planned has a date.')
+  return { state, estimate: state.estimate }
+}
+const give = ({ db, studioId, batchId }: Studio, dateAt: number, orderName?: string) => makePromise(db, studioId, batchId, { dateAt: new Date(dateAt).toISOString(), orderName }, now, searchHere)
+
+describe('a date for an order', () => {
+  it('is never before the plan, likely before cautious, and the promise is the end of a working day', async () => {
+    const { estimate } = await ask(await studioWith())
+    expect(estimate.likelyAt).toBeGreaterThanOrEqual(estimate.plannedAt - hour)
+    expect(estimate.cautiousAt).toBeGreaterThanOrEqual(estimate.likelyAt)
+    expect(estimate.promiseAt).toBeGreaterThanOrEqual(estimate.cautiousAt)
+    expect(new Date(estimate.promiseAt).getUTCHours()).toBe(17)
+    expect(estimate.days.reduce((sum, each) => sum + each.count, 0)).toBe(200)
+  })
+
+  it('is the same when it is asked again, and later with more rework', async () => {
+    const studio = await studioWith()
+    const first = (await ask(studio)).estimate
+    expect((await ask(studio)).estimate).toEqual(first)
+    changeBasis(studio.db, studio.studioId, { reworkOfTen: 6 }, now)
+    expect((await ask(studio)).estimate.cautiousAt).toBeGreaterThan(first.cautiousAt)
+  })
+
+  it('says what it rests on: 1 of 10 till somebody says otherwise, and the record joins in', async () => {
+    const { db, studioId } = await studioWith()
+    expect(readBasis(db, studioId, now)).toMatchObject({ reworkOfTen: null, benchShare: null, rework: 0.1, share: 0.6, coats: 0 })
+    expect(changeBasis(db, studioId, { reworkOfTen: 3, benchShare: 0.8 }, now)).toMatchObject({ reworkOfTen: 3, rework: 0.3, share: 0.8 })
+    expect(changeBasis(db, studioId, { benchShare: null }, now)).toMatchObject({ reworkOfTen: 3, share: 0.6 })
+  })
+
+  it('is told for a batch that nobody has started, and stores nothing', async () => {
+    const { db, studioId, members, places, scheduleOf } = await studioWith()
+    const before = db.$client.serialize()
+    const found = await promiseForNew(db, studioId, members.owner.id, { scheduleId: scheduleOf('oiled-bowl') ?? 0, pieces: 2, sizeUnits: 1, placeId: places.shelf, startsAt: new Date(now).toISOString(), dueAt: null }, now, searchHere)
+    if ('ok' in found) throw new Error(found.message)
+    expect(found.cautiousAt).toBeGreaterThan(now)
+    expect(db.$client.serialize().equals(before)).toBe(true)
+  })
+})
+
+describe('a promise', () => {
+  it('is kept as a row that the next one does not change, with what was known then', async () => {
+    const studio = await studioWith()
+    await give(studio, now + 9 * day)
+    await give(studio, now + 12 * day)
+    const rows = studio.db.select().from(promise).all()
+    expect(rows.map(row => row.dateAt)).toEqual([now + 9 * day, now + 12 * day])
+    expect(rows[0]?.causes).toMatchObject({ drying: expect.any(Number), rework: expect.any(Number), hours: expect.any(Number) })
+    expect(studio.db.select().from(order).get()?.promisedAt).toBe(now + 12 * day)
+  })
+
+  it('is refused with a sentence for a day that is over, for nobody, and for another’s batch', async () => {
+    const studio = await studioWith(null)
+    expect(await give(studio, now - day)).toMatchObject({ reason: 'malformed', fields: { dateAt: 'That day is over. Promise a day that is still to come.' } })
+    expect(await give(studio, now + day)).toMatchObject({ reason: 'malformed', fields: { orderName: 'This batch belongs to no order. Give the order a name: a promise is made to somebody.' } })
+    expect(await makePromise(studio.db, studio.studioId + 1, studio.batchId, { dateAt: new Date(now + day).toISOString() }, now, searchHere)).toMatchObject({ reason: 'absent' })
+    expect(studio.db.select().from(promise).all()).toEqual([])
+    expect(await give(studio, now + 9 * day, 'Harbour fair')).toMatchObject({ order: 'Harbour fair', standing: { promisedAt: now + 9 * day } })
+  })
+
+  it('that slips is called once, withdrawn when it holds again, and called anew when it slips again', async () => {
+    const studio = await studioWith()
+    const { db, studioId } = studio
+    const { estimate } = await ask(studio)
+    const watch = async (at: number) => {
+      await replan(db, studioId, at, atOnce)
+      await watchPromises(db, studioId, at, searchHere)
+      tellingListener(db, studioId, at)
+      return db.select({ key: cause.groupKey, status: reminder.status, body: reminder.body }).from(reminder).innerJoin(cause, eq(cause.id, reminder.causeId)).where(eq(cause.kind, 'promise slipping')).all()
+    }
+    // Promised for the day after tomorrow, long before nine of ten ways are done.
+    await give(studio, now + 2 * day)
+    expect(estimate.cautiousAt).toBeGreaterThan(now + 2 * day)
+    const [call, ...more] = await watch(now + minute)
+    expect(more).toEqual([])
+    expect(call).toMatchObject({ status: 'due' })
+    expect(call?.body).toMatch(/^Fair is promised for Thu 9 Apr; nine of ten ways now take till .*Tell whoever ordered Fair\. No other batch, moved back alone, would save the date\.$/)
+    expect(await watch(now + 20 * minute)).toHaveLength(1)
+    // It holds by a date further off, set behind the watch's back; and slips again.
+    const promiseFor = (at: number) => db.update(order).set({ promisedAt: at }).run()
+    promiseFor(now + 80 * day)
+    expect((await watch(now + 40 * minute)).map(each => each.status)).toEqual(['withdrawn'])
+    promiseFor(now + 2 * day)
+    expect((await watch(now + 60 * minute)).map(each => each.status)).toEqual(['withdrawn', 'due'])
+    expect(db.select().from(promiseWatch).get()).toMatchObject({ slipping: true, slips: 2 })
+  })
+
+  it('is looked at only after a new plan, and at most every quarter of an hour', async () => {
+    const studio = await studioWith()
+    const { db, studioId } = studio
+    await give(studio, now + 30 * day)
+    expect(await watchPromises(db, studioId, now + minute, searchHere)).toBe(1)
+    expect(await watchPromises(db, studioId, now + 30 * minute, searchHere)).toBe(0)
+    await replan(db, studioId, now + 5 * minute, atOnce)
+    expect(await watchPromises(db, studioId, now + 10 * minute, searchHere)).toBe(0)
+    expect(await watchPromises(db, studioId, now + 17 * minute, searchHere)).toBe(1)
+  })
+})

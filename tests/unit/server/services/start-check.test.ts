@@ -1,0 +1,96 @@
+import { eq, inArray } from 'drizzle-orm'
+import { describe, expect, it } from 'vitest'
+import { batch, member, openHours, plan, planEntry, scheduleLink, scheduleStep, scheduleStepTarget } from '~~/db/schema'
+import { atOnce, replan } from '~~/server/planning/replan'
+import { searchHere } from '~~/server/planning/search'
+import { recordAct } from '~~/server/services/acts'
+import { startBatch } from '~~/server/services/batches'
+import { pieceStates } from '~~/server/services/piece-states'
+import { checkStart } from '~~/server/services/start-check'
+import type { StartPlan } from '#shared/schemas/promise'
+import { hour, minute, testStudio } from '../../../helpers/studio'
+
+// A Tuesday, 13:00. People are there from 8:30 to 17:20.
+const now = Date.parse('2026-04-07T13:00:00Z')
+const opening = Date.parse('2026-04-08T08:30:00Z')
+
+/** One maker alone; the resin tray begins with its seal coat, whose window is open for a short while some five and a half hours later. */
+function studioOfOne() {
+  const studio = testStudio(now)
+  const { db, studioId } = studio
+  for (let weekday = 1; weekday <= 5; weekday++) db.insert(openHours).values({ studioId, weekday, fromMin: 8 * 60 + 30, toMin: 17 * 60 + 20 }).run()
+  db.update(member).set({ leftAt: now - hour }).where(eq(member.role, 'owner')).run()
+  const scheduleId = studio.scheduleOf('resin-tray') ?? 0
+  const tape = db.select({ id: scheduleStep.id }).from(scheduleStep).where(eq(scheduleStep.key, 'tape')).all().map(each => each.id)
+  db.delete(scheduleLink).where(inArray(scheduleLink.fromStepId, tape)).run()
+  db.delete(scheduleStepTarget).where(inArray(scheduleStepTarget.stepId, tape)).run()
+  db.delete(scheduleStep).where(inArray(scheduleStep.id, tape)).run()
+  const check = async (pieces: number, at = now) => {
+    const found = await checkStart(db, studioId, studio.members.maker.id, { scheduleId, pieces, sizeUnits: 1, placeId: studio.places.shelf, startsAt: new Date(at).toISOString(), dueAt: null }, at, searchHere)
+    if ('ok' in found) throw new Error(found.message)
+    return new Map(found.plans.map((each): [StartPlan['start'], StartPlan] => [each.start, each]))
+  }
+  const start = (name: string, schedule: number | null, startsAt: number, at: number, pieces = ['One']) => {
+    const made = startBatch(db, studioId, { member: studio.members.maker }, { clientKey: `start-${name}`, name, scheduleId: schedule, pieces, sizeUnits: 1, placeId: studio.places.shelf, order: null, startsAt: new Date(startsAt).toISOString(), oldObject: false }, at)
+    if (!made.ok) throw new Error(made.message)
+    return made
+  }
+  return { ...studio, scheduleId, check, start }
+}
+
+describe('the start check', () => {
+  it('tells a start after which a window shuts at night from one after which it does not', async () => {
+    const { check } = studioOfOne()
+    const plans = await check(1)
+    // Sealed at 13:00 the window opens some five and a half hours later, past 18:00: nobody is there. Sealed on Wednesday at 8:30 it opens about 14:00.
+    const wrong = plans.get('now')
+    expect(wrong?.missed.map(each => each.step)).toEqual(['Flood coat while the seal is tacky'])
+    expect(wrong?.missed[0]?.shutsAt).toBeGreaterThan(Date.parse('2026-04-07T17:20:00Z'))
+    expect(wrong?.missed[0]?.shutsAt).toBeLessThan(opening)
+    expect(plans.get('opening')).toMatchObject({ startsAt: opening, missed: [], without: 0, closed: false, hands: { most: 1 } })
+    expect(plans.get('best')?.missed).toEqual([])
+    // 13:00 is the afternoon's own beginning, so it is no choice besides now.
+    expect([...plans.keys()]).toEqual(['now', 'opening', 'best'])
+  })
+
+  it('says of a start what the plan then says', async () => {
+    const { db, studioId, members, scheduleId, check, start } = studioOfOne()
+    const claimed = (await check(1)).get('opening')
+    start('Tray', scheduleId, opening, now)
+    await replan(db, studioId, now, atOnce)
+    const entries = db.select().from(planEntry).all()
+    expect(Math.min(...entries.map(each => each.startsAt))).toBeGreaterThanOrEqual(opening)
+    expect(Math.max(...entries.map(each => each.endsAt))).toBe(claimed?.endsAt)
+    expect(db.select().from(plan).get()?.clashes).toEqual([])
+    // The other claim: sealed at 13:00 today, the flood coat's window is missed.
+    const other = studioOfOne()
+    const { pieceIds } = other.start('Tray', other.scheduleId, now, now)
+    const told = recordAct(other.db, other.studioId, { member: members.maker }, { clientKey: 'seal is on', kind: 'coat on', doneAt: new Date(now + 10 * minute).toISOString(), pieces: pieceStates(other.db, other.studioId, pieceIds).map(({ id, version }) => ({ id, version })), body: { step: 'seal' } }, now + 10 * minute)
+    expect(told.ok).toBe(true)
+    await replan(other.db, other.studioId, now + 15 * minute, atOnce)
+    expect(other.db.select().from(plan).get()?.clashes[0]).toContain('Flood coat while the seal is tacky')
+  })
+
+  it('names the batch it pushes later, by how much, and stores nothing', async () => {
+    const { db, studioId, scheduleOf, check, start } = studioOfOne()
+    start('Boxes', scheduleOf('painted-waxed-box'), now, now)
+    await replan(db, studioId, now, atOnce)
+    const before = db.$client.serialize()
+    const plans = await check(20)
+    expect(db.$client.serialize().equals(before)).toBe(true)
+    // Twenty seal coats of 6 minutes and their looks keep the one maker from the box.
+    expect(plans.get('now')?.pushes.map(push => push.name)).toEqual(['Boxes'])
+    expect(plans.get('now')?.pushes[0]?.minutes).toBeGreaterThanOrEqual(30)
+    expect(db.select().from(batch).all()).toHaveLength(1)
+  })
+
+  it('says when nobody works at that hour, and that steps find no time where nobody ever does', async () => {
+    const { db, check } = studioOfOne()
+    const night = Date.parse('2026-04-07T22:00:00Z')
+    expect((await check(1, night)).get('now')).toMatchObject({ closed: true })
+    db.delete(openHours).run()
+    const plans = await check(1)
+    expect([...plans.keys()]).toEqual(['now', 'best'])
+    expect(plans.get('best')?.without).toBeGreaterThan(0)
+  })
+})
