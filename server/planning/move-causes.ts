@@ -45,7 +45,7 @@ export class MoveCauses {
     this.busy = busyOf(made)
     this.pieces = new Map(facts.pieces.map(each => [each.id, each]))
     this.knownBatches = new Set(given.works.flatMap(work => work.turns.some(turn => this.last.has(turn.id)) ? [this.batchOf(work)?.batchId ?? 0] : []))
-    this.shutFrom = new Map(keptOut(given.works, facts, toCome.shut, given.zeroAt).map(lag => [lag.to, lag.min ?? 0]))
+    this.shutFrom = new Map(keptOut(given.works, facts, toCome.shut, given.hands, given.zeroAt).map(lag => [lag.to, lag.min ?? 0]))
   }
 
   /** Why a turn that was to begin at `wasAt` begins at `isAt` (ms UTC). */

@@ -1,6 +1,6 @@
 import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
-import { keepOut, material, materialVersion, part, pieceStep, statement, stepTarget, studioRule, vapourStart } from '~~/db/schema'
-import { cautionsOf } from '~~/server/services/cautions'
+import { keepOut, material, materialVersion, part, pieceStep, statement, stepTarget, studioRule, vapourLimit, vapourStart } from '~~/db/schema'
+import { cautionsOf, cautionsWith } from '~~/server/services/cautions'
 import { memberNames } from '~~/server/services/member-names'
 import { openStarts } from '~~/server/services/vapour-facts'
 import type { StartRow } from '~~/server/services/vapour-facts'
@@ -36,8 +36,8 @@ function materialsOf(tx: Transaction, studioId: number, request: ActRequest, bod
   const known = versionIds.flatMap(id => id ?? [])
   const rows = known.length === 0
     ? []
-    : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate, cautions: materialVersion.cautions }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId))
-        .where(scoped(materialVersion, studioId, inArray(materialVersion.id, known))).all()
+    : tx.select({ name: material.name, solvent: materialVersion.solvent, isocyanate: materialVersion.isocyanate, cautions: materialVersion.cautions, solventKey: vapourLimit.solventKey }).from(materialVersion).innerJoin(material, eq(material.id, materialVersion.materialId)).leftJoin(vapourLimit, eq(vapourLimit.materialId, material.id))
+        .where(scoped(materialVersion, studioId, inArray(materialVersion.id, known))).all().map(row => ({ ...row, cautions: cautionsWith(row) }))
   return rows.length < Math.max(1, versionIds.length) ? [...rows, { name: null, solvent: null, isocyanate: false, cautions: ['vapour', 'flames'] }] : rows
 }
 

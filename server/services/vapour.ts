@@ -1,6 +1,6 @@
 import { and, asc, desc, eq, gt, inArray, isNotNull, isNull, sql } from 'drizzle-orm'
 import { cause, keepOut, material, materialVersion, member, person, ragDuty, reminder, room, seen, statement, studioRule, vapourLimit } from '~~/db/schema'
-import { cautionsOf } from '~~/server/services/cautions'
+import { cautionsOf, cautionsWith } from '~~/server/services/cautions'
 import { reshutMs } from '~~/server/services/keep-outs'
 import { memberNames } from '~~/server/services/member-names'
 import type { Membership } from '~~/server/services/sessions'
@@ -89,10 +89,10 @@ function startStates(db: Database, studioId: number, starts: Map<number, StartRo
 
 /** The cautions of everything the studio has on its shelves, each once. */
 function standingCautions(db: Database, studioId: number): VapourState['cautions'] {
-  const rows = db.select({ id: material.id, name: material.name, cautions: materialVersion.cautions, no: materialVersion.no }).from(material).innerJoin(materialVersion, eq(materialVersion.materialId, material.id))
+  const rows = db.select({ id: material.id, name: material.name, cautions: materialVersion.cautions, solvent: materialVersion.solvent, solventKey: vapourLimit.solventKey }).from(material).innerJoin(materialVersion, eq(materialVersion.materialId, material.id)).leftJoin(vapourLimit, eq(vapourLimit.materialId, material.id))
     .where(scoped(material, studioId, isNull(material.archivedAt))).orderBy(asc(material.name), asc(materialVersion.no)).all()
-  const newest = [...new Map(rows.map(row => [row.id, row])).values()]
-  return [{ key: 'phones', materials: [] }, ...cautionsOf(newest)].flatMap(({ key, materials }) => {
+  const newest = [...new Map(rows.map(row => [row.id, row])).values()].map(row => ({ ...row, cautions: cautionsWith(row) }))
+  return [...['phones', 'paint stripper'].map(key => ({ key, materials: [] })), ...cautionsOf(newest)].flatMap(({ key, materials }) => {
     const known = findCaution(key)
     return known ? [{ key: known.key, materials }] : []
   })

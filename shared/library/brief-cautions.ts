@@ -6,6 +6,7 @@ import type { StepKind } from '#shared/terms'
  * only its full text: a few words would make it milder than it is.
  */
 const brief = {
+  'ask first': 'Harms unseen: ask first',
   'isocyanate': 'Asthma for life: ask first',
   'old paint': 'Lead? No sanding, no heat',
   'green cloth': 'Arsenic? No sanding, no cutting',

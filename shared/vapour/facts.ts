@@ -60,6 +60,13 @@ export const isSolventBorne = (solvent: string | null) => solvent === null || (s
 export const givesVapour = ({ solvent, voc, sheet }: Pick<CoatFacts, 'solvent' | 'voc' | 'sheet'>) =>
   isSolventBorne(solvent) || (solvent === 'water' && (sheet?.vocGramsPerLitre ?? voc?.high ?? voc?.typical ?? 0) > 0)
 
+/** Whether a vapour is spoken of in words only: the solvent that its sheet names, else the one usual for its kind, passes the skin, sensitises or can cause cancer. */
+export function speaksInWords(solvent: string | null, solventKey: string | null): boolean {
+  const kind = kindOf(solvent)
+  const found = solventKey ? findSolvent(solventKey) : kind && assumedSolvent(kind)
+  return (found?.textOnly ?? null) !== null
+}
+
 function readLimits({ solvent, sheet }: CoatFacts): { limits: VapourLimits, source: InputSource } {
   const figures = sheet ?? none
   const named = sheet?.solventKey ? findSolvent(sheet.solventKey) : null

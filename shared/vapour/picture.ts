@@ -20,6 +20,8 @@ export interface RoomSums {
   hasM3PerHour: number | null
   contributions: Contribution[]
   inputs: UsedInput[]
+  /** A vapour in it is spoken of in words only: whom to ask, and no figure of air. */
+  askFirst: boolean
   /** Limits the sums are held against: the strictest of the coats. */
   limitMgM3: number | null
   ceilingMgM3: number | null
@@ -69,6 +71,7 @@ export function roomSums(setUp: RoomSetUp, exhaustRuns: boolean, all: readonly N
     hasM3PerHour: air.airChangesPerHour === null || air.volumeM3 === null ? null : air.airChangesPerHour * air.volumeM3,
     contributions: coats.map(({ id, piece, material, planned, at }, i) => ({ id, piece, material, planned, at, grams: read[i]!.grams, share: parts[i]!, inputs: read[i]!.inputs })).sort((a, b) => b.share - a.share),
     inputs: roomInputs(setUp, air),
+    askFirst: read.some(each => each.cautious.limits.textOnly !== null),
     limitMgM3: least(read.map(each => each.likely.limits.limitMgM3)),
     ceilingMgM3: least(read.map(each => each.likely.limits.ceilingMgM3)),
   }

@@ -44,6 +44,7 @@ export const vapourWords = {
   needs: 'Air it asks for',
   has: 'Air the room has',
   noFigure: 'No figure: see what is not known',
+  askFirst: 'No figure: ask first',
   notKnown: 'not known',
   clearBefore: 'Not expected clear before',
   noClear: 'cannot be told',

@@ -1,12 +1,13 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { keepOut, ragDuty, room, vapourStart } from '~~/db/schema'
+import { keepOut, materialVersion, ragDuty, room, vapourStart } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import type { Teller } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { openRoom } from '~~/server/services/keep-outs'
 import { pieceStates } from '~~/server/services/piece-states'
-import { addStatement, withdrawStatement } from '~~/server/services/vapour-settings'
+import { vapourState } from '~~/server/services/vapour'
+import { addStatement, setSheetFigures, withdrawStatement } from '~~/server/services/vapour-settings'
 import { wantedReminders } from '~~/server/reminders/wanted'
 import type { ActRequest, VapourAnswers } from '#shared/schemas/act'
 import { hour, minute, testStudio } from '../../../helpers/studio'
@@ -92,6 +93,27 @@ describe('solvent work in a room', () => {
     known.db.update(room).set({ volumeM3: 100, airChangesPerHour: 6, airMoves: 'fan and windows' }).where(eq(room.id, known.rooms.bench)).run()
     wax(known)
     expect(known.db.select().from(keepOut).all()).toEqual([])
+  })
+})
+
+describe('a vapour that is spoken of in words only', () => {
+  it('says whom to ask: before the work, on the page, and beside its room, where no figure of air stands', () => {
+    const { lacquer, db, studioId, members, materialOf, rooms } = studioWith('booth')
+    const materialId = db.select({ id: materialVersion.materialId }).from(materialVersion).where(eq(materialVersion.id, materialOf('nitrocellulose-lacquer') ?? 0)).get()?.id ?? 0
+    const keys = () => {
+      const asked = lacquer(1)
+      return 'current' in asked ? (asked.current as { cautions: { key: string }[] }).cautions.map(each => each.key) : []
+    }
+    expect(keys()).not.toContain('ask first')
+    const blank = { limitMgM3: null, ceilingMgM3: null, lelGramsM3: null, vocGramsPerLitre: null, exemptGramsPerLitre: null, spreadM2PerLitre: null, touchDryMinutes: null }
+    setSheetFigures(db, studioId, members.owner.id, materialId, { ...blank, solventKey: 'methanol' }, now)
+    expect(keys()).toContain('ask first')
+    db.update(room).set({ volumeM3: 40, exhaustM3H: 400, airMoves: 'measured fan' }).where(eq(room.id, rooms.spray)).run()
+    expect(lacquer(1, { vapour: running })).toMatchObject({ ok: true })
+    const state = vapourState(db, studioId, members.owner, now)
+    expect(state.rooms.find(each => each.roomId === rooms.spray)?.now).toMatchObject({ askFirst: true, cautious: { neededM3PerHour: null } })
+    expect(state.cautions.find(each => each.key === 'ask first')?.materials).toContain('Nitrocellulose lacquer')
+    expect(state.cautions.map(each => each.key)).toEqual(expect.arrayContaining(['phones', 'paint stripper']))
   })
 })
 
