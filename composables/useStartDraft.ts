@@ -1,4 +1,5 @@
 import type { BatchRequest } from '#shared/schemas/batch'
+import type { BatchToComeRequest } from '#shared/schemas/promise'
 import { fromLocal } from '#shared/time'
 import type { StudioZone } from '#shared/time'
 import { startWords } from '#shared/words/start'
@@ -23,9 +24,11 @@ export interface StartDraft {
   dueTime: string
   oldObject: boolean
   areaM2: number | null
+  /** The day to promise with the start, ms UTC. */
+  promiseAt: number | null
 }
 
-const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null })
+const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null, promiseAt: null })
 
 /** "Ledger" from "Ledgers", for a start: what one piece of a batch may be called. */
 export function stemOf(batchName: string): string {
@@ -83,6 +86,7 @@ export function requestOf(draft: StartDraft, names: readonly string[], startsAt:
     ...draft.placeId === null ? { placeId: startWords.wantPlace } : {},
     ...draft.dueDay === '' && draft.dueTime !== '' ? { 'order.dueAt': startWords.wantDue } : {},
     ...draft.orderName.trim() === '' && draft.dueDay !== '' ? { 'order.name': startWords.wantOrder } : {},
+    ...draft.orderName.trim() === '' && draft.promiseAt !== null ? { 'order.name': startWords.wantWhom } : {},
   }
   if (Object.keys(fields).length > 0 || startsAt === null || draft.placeId === null) return { fields }
   return {
@@ -92,4 +96,18 @@ export function requestOf(draft: StartDraft, names: readonly string[], startsAt:
       startsAt: new Date(startsAt).toISOString(), oldObject: draft.oldObject, areaM2: draft.areaM2,
     },
   }
+}
+
+/** What starts and dates are asked about: the batch as it is typed so far; null while something it rests on is missing. */
+export function questionOf(draft: StartDraft, count: number, startsAt: number | null, zone: StudioZone): BatchToComeRequest | null {
+  const { scheduleId, placeId } = draft
+  if (scheduleId === null || scheduleId === 0 || placeId === null || count < 1 || startsAt === null) return null
+  const dueAt = draft.dueDay === '' ? null : typedInstant(draft.dueDay, draft.dueTime || '17:00', zone)
+  return { scheduleId, pieces: count, sizeUnits: draft.sizeUnits ?? 1, placeId, startsAt: new Date(startsAt).toISOString(), dueAt: dueAt === null ? null : new Date(dueAt).toISOString() }
+}
+
+/** What tells one such batch from another; the clock alone makes no new one. */
+export function subjectOf(draft: StartDraft, count: number): { batch: string, start: string } {
+  const batch = [draft.scheduleId, count, draft.sizeUnits, draft.placeId, draft.dueDay, draft.dueTime].join(' ')
+  return { batch, start: [batch, draft.when, ...draft.when === 'other' ? [draft.day, draft.time] : []].join(' ') }
 }

@@ -50,6 +50,7 @@ export const startWords = {
   wantWhen: 'Give a day and a time for the start.',
   wantDue: 'Give the day as well as the time it is due.',
   wantOrder: 'Give the order a name, or leave its date empty.',
+  wantWhom: 'Give the order a name: a promise is made to somebody.',
   wantPlace: 'Choose a place for the pieces first.',
   wantSchedule: 'Choose a schedule, or none.',
   wantCount: 'Give a whole number of pieces, from 1 to 60.',
