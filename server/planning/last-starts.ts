@@ -3,6 +3,7 @@ import type { StudioProblem } from '~~/server/planning/problem'
 import { handsOf } from '~~/server/planning/hands'
 import { minutesFrom } from '~~/server/planning/waits'
 import { lastStart } from '#shared/planning/lastStart'
+import type { LastStart } from '#shared/planning/lastStart'
 import type { Interval, Plan } from '#shared/planning/types'
 import { studioZone } from '#shared/time'
 
@@ -33,10 +34,23 @@ export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts,
     const step = works.get(members[0] ?? '')?.step
     if (!step) continue
     const windows = members.flatMap(id => shuts.get(id) ?? [])
-    const { all, firstFew } = lastStart({ shuts: windows.map(each => each.shuts), opens: windows.map(each => each.opens), setup: step.setupMin, minutes: step.pieceMin, now: nowMinute, open })
+    const { all, firstFew } = forSome(windows, windows.length, step, nowMinute, open)
     for (const id of members) found.set(id, { lastStart: all, firstFew: firstFew?.count ?? null, lastStartFew: firstFew?.minute ?? null })
   }
   return found
+}
+
+/** While all can still be done, a third of them is told too: for those there is longer time. */
+const share = 3
+
+/** The last moment for all, and for the first few: as many as can still be done, or a third while all can. */
+function forSome(windows: readonly LastWindow[], count: number, step: StudioProblem['works'][number]['step'], now: number, open: readonly Interval[]): LastStart {
+  const chosen = [...windows].sort((a, b) => b.shuts - a.shuts).slice(0, count)
+  const found = lastStart({ shuts: chosen.map(each => each.shuts), opens: chosen.map(each => each.opens), setup: step.setupMin, minutes: step.pieceMin, now, open })
+  const few = Math.ceil(count / share)
+  if (count < windows.length || found.all === null || found.firstFew !== null || few === count) return found
+  const { all } = forSome(windows, few, step, now, open)
+  return all !== null && all > found.all ? { all: found.all, firstFew: { count: few, minute: all } } : found
 }
 
 /** Minutes from the problem's zero. */

@@ -17,7 +17,6 @@ const what = ({ batch, count }: Work) => `${batch}, ${pieces(count)}.`
 export const callWords = {
   lastMoment: {
     title: (by: string) => `Start by ${by}`,
-    firstFew: (count: number, by: string) => `by ${by} for the first ${count}`,
     all: (work: Work, says: string, few: string | null) => `${what(work)} ${asSentence(few ? `${says}, ${few}` : says)}`,
     few: (work: Work, all: number, says: string) => `${what(work)} There is no longer time for all ${all}. ${asSentence(says)}`,
   },

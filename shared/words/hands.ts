@@ -1,4 +1,5 @@
 import type { Job, Section } from '#shared/hands'
+import type { StillToday } from '#shared/hands-today'
 import type { Clock } from '#shared/time'
 import { clockTime, roughTime, span } from '#shared/time'
 import type { FilmState } from '#shared/schemas/piece-state'
@@ -6,7 +7,7 @@ import type { Hold, MilestoneName } from '#shared/terms'
 import type { ReasonCode } from '#shared/drying/types'
 import type { StartBy } from '#shared/verdict/next'
 import { groupNames, listText } from '#shared/words/group'
-import { beginReason, momentReason, momentText } from '#shared/words/moments'
+import { beginReason, firstFewText, momentReason, momentText } from '#shared/words/moments'
 import { lowerFirst, milestoneText } from '#shared/words/steps'
 import { asSentence, limitText, predictionReason } from '#shared/words/verdict'
 
@@ -112,12 +113,22 @@ function startOf(moment: StartBy, job: Job, clock: Clock): string {
   const why = momentReason(moment, clock)
   const here = moment.pieces !== null && moment.pieces.all > job.pieces.length ? `, ${job.pieces.length} of them here` : ''
   const waits = job.may || job.because.code === 'role' ? [] : [beginReason(job.because)]
-  return asSentence([`${momentText(moment, clock)}${here}`, ...why ? [why] : [], ...waits].join('; '))
+  const plan = job.pieces.map(each => each.turn.turn.plan).find(each => each && each.firstFew !== null && each.lastStartFewAt !== null && each.lastStartFewAt > moment.at)
+  const few = moment.at >= clock.now && plan?.firstFew && plan.lastStartFewAt ? `, ${firstFewText(plan.firstFew, plan.lastStartFewAt, clock)}` : ''
+  return asSentence([`${momentText(moment, clock)}${few}${here}`, ...why ? [why] : [], ...waits].join('; '))
 }
 
 function plannedText({ turn, at }: Job, clock: Clock): string | null {
   if (!turn.plan || at === null || at <= clock.now) return null
   return `may begin; planned for ${roughTime(at, clock, 'down')}`
+}
+
+/** "Start by 15:20 to do all 12 before 17:00.", or how many there is still time for. */
+export function todayText({ pieces, allAt, few, shutsAt }: StillToday, clock: Clock): string {
+  const shut = clockTime(shutsAt, clock)
+  // Closing is no prediction: it is told as finely as it is known.
+  if (allAt !== null) return `Start by ${roughTime(allAt, clock, 'down', 0)} to ${pieces === 1 ? 'finish' : pieces === 2 ? 'do both' : `do all ${pieces}`} before ${shut}.`
+  return few === null ? 'There is no longer time for it today.' : `There is no longer time for all ${pieces} today: start ${firstFewText(few.count, few.at, clock, 0)}.`
 }
 
 /** "25 min" of attended work for the whole job. */

@@ -19,6 +19,9 @@ function startText(start: StartBy, clock: Clock): string {
   return start.at < clock.now ? `late: ${noun} was to start ${byText(start, clock)}` : `start ${noun} ${byText(start, clock)}`
 }
 
+/** "by 14:35 for the first 4": as many as can still be done when the last moment for all is over. */
+export const firstFewText = (count: number, at: number, clock: Clock, doubtMs?: number) => `by ${roughTime(at, clock, 'down', doubtMs)} for the first${count === 1 ? '' : ` ${count}`}`
+
 /** "start by 14:35 to do both", where the line says already what. */
 export function startByText(start: StartBy, clock: Clock): string {
   return start.at < clock.now ? `late: was to start ${byText(start, clock)}` : `start ${byText(start, clock)}`

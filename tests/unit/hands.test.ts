@@ -173,3 +173,11 @@ describe('times and strips', () => {
     expect(strip.toAt).toBeGreaterThan(now + 3.5 * hour)
   })
 })
+
+describe('the last moment of a job', () => {
+  it('is told for all and for the first few', () => {
+    const plan = planAt(now + 10 * minute, { sessionSize: 3, lastStartAt: now + 20 * minute, firstFew: 1, lastStartFewAt: now + 50 * minute })
+    const [job] = jobs([1, 2, 3].map(id => piece(id, [turn(id, now - hour, { plan })])))
+    expect(job && jobMoment(job, null, clock)).toBe('Start second varnish by 10:20 to do all 3, by 10:50 for the first.')
+  })
+})
