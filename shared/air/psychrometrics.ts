@@ -39,6 +39,30 @@ export function wetBulb(tempC: number, rh: number, pressure = standardPressure):
   return psychrolib.GetTWetBulbFromRelHum(temperature('tempC', tempC), share(rh), pressureOf(pressure))
 }
 
+// Saturation over liquid water, ln(Pa) against kelvin: ASHRAE Handbook of Fundamentals 2017, chapter 1, equation 6.
+const overWater = (kelvin: number) => Math.exp(-5.8002206e3 / kelvin + 1.3914993 - 4.8640239e-2 * kelvin + 4.1764768e-5 * kelvin ** 2 - 1.4452093e-8 * kelvin ** 3 + 6.5459673 * Math.log(kelvin))
+
+/**
+ * The temperature that a wet surface takes whose water stays liquid, degrees Celsius: the thermodynamic wet bulb (equation 33), and below freezing
+ * its smooth going-on. The wet bulb itself steps there by half a degree, from water to ice, which a drying film does not do. `rh` 0..1.
+ */
+export function wetSurface(tempC: number, rh: number): number {
+  const ratio = humidityRatio(tempC, rh)
+  const excess = (surface: number) => {
+    const pressure = overWater(surface + 273.15)
+    const saturated = 0.621945 * pressure / (standardPressure - pressure)
+    return ((2501 - 2.326 * surface) * saturated - 1.006 * (tempC - surface)) / (2501 + 1.86 * tempC - 4.186 * surface) - ratio
+  }
+  let low = tempC - 60
+  let high = tempC
+  while (high - low > 1e-4) {
+    const middle = (low + high) / 2
+    if (excess(middle) > 0) high = middle
+    else low = middle
+  }
+  return (low + high) / 2
+}
+
 /** Humidity ratio, kg of water per kg of dry air, at a pressure in Pa (equation 20). `rh` 0..1. */
 export function humidityRatio(tempC: number, rh: number, pressure = standardPressure): number {
   return psychrolib.GetHumRatioFromRelHum(temperature('tempC', tempC), share(rh), pressureOf(pressure))

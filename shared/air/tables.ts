@@ -1,4 +1,4 @@
-import { saturationPressure, standardPressure, vapourPressureDeficit, wetBulb } from '#shared/air/psychrometrics'
+import { saturationPressure, standardPressure, vapourPressureDeficit, wetSurface } from '#shared/air/psychrometrics'
 
 const lowestC = -40
 const highestC = 70
@@ -8,23 +8,23 @@ const rhSteps = 49
 export const saturatedRh = 0.97
 
 /**
- * Psychrometrics tabulated once: a wet bulb costs microseconds, and months of air in every room ask for many thousands.
+ * Psychrometrics tabulated once: a wet surface costs microseconds, and months of air in every room ask for many thousands.
  * Reads no clock and no reading, so one object serves every room. Errors against the library stay under 0.1 %.
  */
 export interface AirTables {
   /** Pa, every 0.1 degree from -40 to 70 C. */
   saturation: Float64Array
-  /** sqrt(VPD x wet-bulb depression)/(1 - RH), every degree and every 0.02 of RH: that quotient is nearly flat. */
+  /** sqrt(VPD x depression of a wet surface)/(1 - RH), every degree and every 0.02 of RH: that quotient is nearly flat. */
   evaporation: Float64Array
 }
 
 /** The driving force of an open water film, sqrt(Pa K): the geometric mean of the two physical limits, before any reference. */
 export function evaporationForce(tempC: number, rh: number): number {
   if (rh >= saturatedRh) return 0
-  return Math.sqrt(vapourPressureDeficit(tempC, rh) * Math.max(0, tempC - wetBulb(tempC, rh)))
+  return Math.sqrt(vapourPressureDeficit(tempC, rh) * Math.max(0, tempC - wetSurface(tempC, rh)))
 }
 
-/** Builds the tables: about 5,500 wet bulbs, some tens of milliseconds, once a process. */
+/** Builds the tables: about 5,500 wet surfaces, some tens of milliseconds, once a process. */
 export function airTables(): AirTables {
   const pressures = (highestC - lowestC) * pressureStepsPerC + 1
   const saturation = Float64Array.from({ length: pressures }, (_, i) => saturationPressure(lowestC + i / pressureStepsPerC))
@@ -34,7 +34,7 @@ export function airTables(): AirTables {
     for (let column = 0; column < width; column++) {
       const rh = column / 50
       const tempC = lowestC + row
-      const force = Math.sqrt(vapourPressureDeficit(tempC, rh) * Math.max(0, tempC - wetBulb(tempC, rh)))
+      const force = Math.sqrt(vapourPressureDeficit(tempC, rh) * Math.max(0, tempC - wetSurface(tempC, rh)))
       evaporation[row * width + column] = force / (1 - rh)
     }
   }

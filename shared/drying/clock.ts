@@ -6,7 +6,9 @@ import type { RoomTrack } from '#shared/air/room'
 import { lastBefore, trackDewPoint, trackMany, trackTemp } from '#shared/air/room'
 import { shapeAt } from '#shared/air/shape'
 import { localTimeOfDay, offsetAt } from '#shared/air/zone'
-import { coldShare, fuses, moistureShare } from '#shared/drying/rates'
+import { coldShare, coldSpanC, fuses, moistureShare } from '#shared/drying/rates'
+import { forceSum, instantOfSum, sumAt, whole } from '#shared/drying/force'
+import type { ForceSum } from '#shared/drying/force'
 import type { DryingTools } from '#shared/drying/tools'
 import { tabledForce, trackRoom } from '#shared/drying/tools'
 import type { PreparedMaterial } from '#shared/drying/material'
@@ -45,8 +47,8 @@ export interface RoomClock {
 /** A stretch in which the air keeps to a condition, ms UTC. */
 export interface Spell { from: number, to: number }
 
-/** Cumulative driving force of one driver, in force x ms: at the past's knots, through one day, and at each bend. */
-export interface RateTable { past: Float64Array, day: Float64Array, atBend: Float64Array, clock: RoomClock }
+/** Cumulative driving force of one driver: over the past, through one local day, and at each bend (force x ms). */
+export interface RateTable { past: ForceSum, day: ForceSum, atBend: Float64Array, clock: RoomClock }
 
 function sample(air: AirTables, temps: Float64Array, dewPoints: Float64Array): AirSamples {
   const rhs = new Float64Array(temps.length)
@@ -104,21 +106,33 @@ export function roomClock(room: RoomAir, since: number, tools: DryingTools): Roo
   }
 }
 
-/** Trapezoids over the knots; `forces` is turned into its own running sum to spare an array. */
-function cumulate(times: Float64Array, forces: Float64Array): Float64Array {
-  let sum = 0
-  let before = forces[0]!
-  forces[0] = 0
-  for (let i = 1; i < forces.length; i++) {
-    const now = forces[i]!
-    sum += (before + now) / 2 * (times[i]! - times[i - 1]!)
-    forces[i] = sum
-    before = now
-  }
-  return forces
-}
-
 const quarters = Float64Array.from({ length: 97 }, (_, i) => i * quarterMs)
+
+interface Knots { times: Float64Array, air: AirSamples }
+
+/** The same air with a knot more wherever it passes one of some temperatures, at which a rate bends. */
+function bentAt({ times, air }: Knots, limits: readonly number[]): Knots {
+  const { temps, rhs, ratios } = air
+  const added: { at: number, before: number, share: number }[] = []
+  for (let i = 1; i < times.length; i++) {
+    const from = temps[i - 1]!
+    const rise = temps[i]! - from
+    const shares = limits.map(limit => (limit - from) / rise).filter(share => share > 0 && share < 1).sort((a, b) => a - b)
+    for (const share of shares) added.push({ at: times[i - 1]! + share * (times[i]! - times[i - 1]!), before: i - 1, share })
+  }
+  if (added.length === 0) return { times, air }
+  const woven = (values: Float64Array, more: readonly number[]) => {
+    const all = new Float64Array(values.length + more.length)
+    let next = 0
+    for (let i = 0; i < values.length; i++) {
+      all[i + next] = values[i]!
+      for (; next < added.length && added[next]!.before === i; next++) all[i + next + 1] = more[next]!
+    }
+    return all
+  }
+  const between = (values: Float64Array) => woven(values, added.map(({ before, share }) => values[before]! + (values[before + 1]! - values[before]!) * share))
+  return { times: woven(times, added.map(each => each.at)), air: { temps: between(temps), rhs: between(rhs), ratios: between(ratios) } }
+}
 
 function forcesOf(tools: DryingTools, driver: Driver, samples: AirSamples, material: PreparedMaterial): Float64Array {
   const { temps, rhs, ratios } = samples
@@ -134,22 +148,26 @@ function forcesOf(tools: DryingTools, driver: Driver, samples: AirSamples, mater
   return forces
 }
 
-function throughDays(day: Float64Array, local: number): number {
+function throughDays(day: ForceSum, local: number): number {
   const days = Math.floor(local / dayMs)
-  const place = (local - days * dayMs) / quarterMs
-  const i = Math.min(95, Math.floor(place))
-  return days * day[96]! + day[i]! + (day[i + 1]! - day[i]!) * (place - i)
+  return days * whole(day) + sumAt(day, local - days * dayMs)
 }
 
 /** The cumulative force of a driver for a material in this room, built on first asking and then shared by every coat that wants the same. */
 export function rateTable(clock: RoomClock, driver: Driver, material: PreparedMaterial): RateTable {
-  const key = `${driver}/${fuses(driver) ? material.material.minTempC : ''}/${driver === 'moisture' ? material.referenceRatio : ''}`
+  const { minTempC } = material.material
+  const key = `${driver}/${fuses(driver) ? minTempC : ''}/${driver === 'moisture' ? material.referenceRatio : ''}`
   const known = clock.rates.get(key)
   if (known) return known
-  const past = cumulate(clock.times, forcesOf(clock.tools, driver, clock.past, material))
-  const day = cumulate(quarters, forcesOf(clock.tools, driver, clock.day, material))
+  const limits = minTempC !== null && fuses(driver) ? [minTempC, minTempC - coldSpanC] : []
+  const summed = (knots: Knots) => {
+    const { times, air } = bentAt(knots, limits)
+    return forceSum(times, forcesOf(clock.tools, driver, air, material))
+  }
+  const past = summed({ times: clock.times, air: clock.past })
+  const day = summed({ times: quarters, air: clock.day })
   const atBend = new Float64Array(clock.bends.length)
-  atBend[0] = past[past.length - 1]!
+  atBend[0] = whole(past)
   for (let i = 1; i < atBend.length; i++) {
     const { at } = clock.bends[i]!
     const { at: from, offset } = clock.bends[i - 1]!
@@ -163,49 +181,23 @@ export function rateTable(clock: RoomClock, driver: Driver, material: PreparedMa
 /** Cumulative force (x ms) from the clock's `since` to an instant at or after it. */
 export function gainedBy(table: RateTable, at: number): number {
   const { clock, past } = table
-  if (at >= clock.turnAt) {
-    let i = clock.bends.length - 1
-    while (i > 0 && clock.bends[i]!.at > at) i--
-    const bend = clock.bends[i]!
-    return table.atBend[i]! + throughDays(table.day, at + bend.offset) - throughDays(table.day, bend.at + bend.offset)
-  }
-  const i = lastBefore(clock.times, at)
-  if (i < 0) return 0
-  const from = clock.times[i]!
-  const share = (at - from) / (clock.times[i + 1]! - from)
-  return past[i]! + (past[i + 1]! - past[i]!) * share
-}
-
-function firstAtLeast(sums: Float64Array, target: number): number {
-  let low = -1
-  let high = sums.length - 1
-  while (high - low > 1) {
-    const middle = (low + high) >> 1
-    if (sums[middle]! >= target) high = middle
-    else low = middle
-  }
-  return high
+  if (at < clock.turnAt) return sumAt(past, at)
+  let i = clock.bends.length - 1
+  while (i > 0 && clock.bends[i]!.at > at) i--
+  const bend = clock.bends[i]!
+  return table.atBend[i]! + throughDays(table.day, at + bend.offset) - throughDays(table.day, bend.at + bend.offset)
 }
 
 /** First instant at which the cumulative force reaches a target; Infinity when it never does. */
 export function momentOf(table: RateTable, target: number): number {
   const { clock, past, day, atBend } = table
-  if (target <= atBend[0]!) {
-    const i = firstAtLeast(past, target)
-    if (i === 0) return clock.since
-    const share = (target - past[i - 1]!) / (past[i]! - past[i - 1]!)
-    return clock.times[i - 1]! + (clock.times[i]! - clock.times[i - 1]!) * share
-  }
-  const total = day[96]!
+  if (target <= atBend[0]!) return instantOfSum(past, target)
+  const total = whole(day)
   if (!(total > 0) || target === Infinity) return Infinity
   let b = atBend.length - 1
   while (b > 0 && atBend[b]! >= target) b--
   const bend = clock.bends[b]!
   const need = target - atBend[b]! + throughDays(day, bend.at + bend.offset)
   const days = Math.floor(need / total)
-  const rest = need - days * total
-  const i = Math.max(1, firstAtLeast(day, rest))
-  const step = day[i]! - day[i - 1]!
-  const share = step > 0 ? (rest - day[i - 1]!) / step : 0
-  return days * dayMs + (i - 1 + share) * quarterMs - bend.offset
+  return days * dayMs + instantOfSum(day, need - days * total) - bend.offset
 }

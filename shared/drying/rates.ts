@@ -59,10 +59,13 @@ export function moistureShare(ratio: number, referenceRatio: number): number {
   return Math.min(3, Math.max(0.1, ratio / referenceRatio))
 }
 
-/** 1 at the minimum temperature and above, 0 from 2 degrees below it, for films that need warmth to fuse; 1 for the others. */
+/** So many degrees under its minimum temperature a film that needs warmth has stopped. */
+export const coldSpanC = 2
+
+/** 1 at the minimum temperature and above, 0 from `coldSpanC` below it, for films that need warmth to fuse; 1 for the others. */
 export function coldShare(driver: Driver, tempC: number, minTempC: number | null): number {
   if (minTempC === null || !fuses(driver)) return 1
-  return Math.min(1, Math.max(0, (tempC - minTempC + 2) / 2))
+  return Math.min(1, Math.max(0, (tempC - minTempC + coldSpanC) / coldSpanC))
 }
 
 /** Factor of moving air on `water` and `solvent`; `airSpeed` in m/s, 0.1 is still (the wind term of ACI 305). */

@@ -22,6 +22,19 @@ describe('ranges', () => {
   })
 })
 
+describe('a wet surface', () => {
+  it('is the wet bulb where that is above freezing', () => {
+    for (const [tempC, rh] of [[20, 0.5], [35, 0.15], [8, 0.6], [10, 0.3]] as const) expect(psychrometrics.wetSurface(tempC, rh)).toBeCloseTo(psychrometrics.wetBulb(tempC, rh), 2)
+  })
+
+  it('goes on without a step where the wet bulb turns to ice, and rises all the way', () => {
+    const steps = Array.from({ length: 200 }, (_, i) => psychrometrics.wetSurface(i / 20, 0.3))
+    const rises = steps.slice(1).map((surface, i) => surface - steps[i]!)
+    expect(Math.min(...rises)).toBeGreaterThan(0.01)
+    expect(Math.max(...rises)).toBeLessThan(0.05)
+  })
+})
+
 describe('tables', () => {
   const tables = airTables()
   const climates = [[-7.3, 0.61], [3.33, 0.11], [12.2, 0.968], [19.95, 0.503], [27.01, 0.35], [38.6, 0.79]] as const
