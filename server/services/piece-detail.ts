@@ -10,13 +10,17 @@ import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
 import { adviceLines } from '~~/server/services/advice'
+import { wetCoats } from '~~/server/services/vapour-facts'
 import { predictFilms } from '~~/server/work/predict'
+import { roomsOfParts } from '~~/server/work/rooms-of-parts'
 import { foldPieces } from '~~/server/work/refold'
 import type { FoldedPiece } from '~~/server/work/refold'
 import type { LayerLine, PieceDetail } from '#shared/schemas/piece-detail'
 import type { CautionWire } from '#shared/schemas/schedule'
 import type { CautionKey } from '#shared/library/cautions'
 import type { IntakeQuestion } from '#shared/terms'
+import { isSolventBorne } from '#shared/vapour/facts'
+import { adviceBesideSolvent } from '#shared/words/advice'
 
 /** One piece with all that was told of it and all that is to come; also one that has left the studio. `now` in ms UTC. */
 export function findPiece(db: Database, studioId: number, reader: Membership, pieceId: number, now: number): PieceDetail | Refusal {
@@ -32,7 +36,7 @@ export function findPiece(db: Database, studioId: number, reader: Membership, pi
     branch: branch && { fromStep: folded.folded.steps.find(step => step.key === branch.fromStep)?.name ?? '', sinceAt: folded.acts.find(each => each.rootId === branch.actId)?.doneAt ?? now, rejoined: branch.rejoinedActId !== null },
     faceNames: readFaceNames(db, studioId, folded), layers: readLayers(db, studioId, pieceId),
     steps: pieceSteps(db, studioId, folded), history: pieceHistory(db, studioId, folded, reader, now),
-    films: readReasons(db, studioId, pieceId, now), cautions: readCautions(db, studioId, pieceId, intakes), intakes,
+    films: readReasons(db, studioId, folded, pieceId, now), cautions: readCautions(db, studioId, pieceId, intakes), intakes,
   }
 }
 
@@ -65,10 +69,13 @@ function readLayers(db: Database, studioId: number, pieceId: number): LayerLine[
 }
 
 /** Why the films on it dry as they do, and what the air has to say about each. */
-function readReasons(db: Database, studioId: number, pieceId: number, now: number): PieceDetail['films'] {
+function readReasons(db: Database, studioId: number, { parts }: FoldedPiece, pieceId: number, now: number): PieceDetail['films'] {
   const predicted = predictFilms(db, studioId, [pieceId], now)
+  const roomOf = roomsOfParts(db, studioId, [pieceId])
+  const wet = wetCoats(db, studioId, now)
+  const beside = parts.some(({ id }) => (wet.get(roomOf(id)?.id ?? 0) ?? []).some(coat => isSolventBorne(coat.solvent)))
   const rates = ratesOf(db, studioId, predicted.map(each => each.coat.id), now)
-  const advice = adviceLines(db, studioId, predicted.map(({ coat: row, prediction }) => ({ id: row.id, versionId: row.materialVersionId, advice: prediction.advice })))
+  const advice = adviceLines(db, studioId, predicted.map(({ coat: row, prediction }) => ({ id: row.id, versionId: row.materialVersionId, advice: beside ? prediction.advice.map(adviceBesideSolvent) : prediction.advice })))
   return predicted.map(({ coat: { id } }) => ({ coatId: id, rate: rates.find(each => each.coatId === id) ?? null, advice: advice.get(id) ?? [] }))
 }
 

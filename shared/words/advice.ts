@@ -44,6 +44,15 @@ export function adviceText(facts: AdviceFacts): string {
   }
 }
 
+// What advice that asks for warm, dry or moving air says instead in a room with a wet solvent film: a heater or a motor there feeds the vapour and can light it.
+const besideSolvent = new Map<string, string>(Object.entries({
+  'too-damp': 'Too damp for a time to be promised. Wait for drier air: no heater, dehumidifier or fan beside a wet solvent film.',
+  'cold-before-strength': 'It turns cold before the joint has its strength: glue that cold dries weak. Take it to a warmer room: no heater beside a wet solvent film.',
+} satisfies Partial<Record<AdviceCode, string>>))
+
+/** A piece of advice as it is said beside a wet solvent film. */
+export const adviceBesideSolvent = ({ code, text }: { code: string, text: string }) => ({ code, text: besideSolvent.get(code) ?? text })
+
 /** How long a mixed quantity lasts at the room's warmth, against its sheet. Minutes. */
 export function potLifeText({ room, minutes, sheetMinutes, tempC }: { room: string, minutes: number, sheetMinutes: number, tempC: number }): string {
   return `${room}, ${degrees(tempC)}: what is mixed lasts about ${Math.round(minutes)} min; the sheet says ${Math.round(sheetMinutes)}. A deep pot goes off sooner.`
