@@ -3,7 +3,7 @@ import type { PlaceKind, StepKind } from '#shared/terms'
 
 /**
  * Why a turn lies elsewhere than people last heard. Only what the plan's own facts prove is named; else it says that it fits better now.
- * Instants are ms UTC; `tempC` is the coldest the room is foretold to become before the film is ready.
+ * Instants are ms UTC; `tempC` is the coldest the room is foretold to become before the film is ready. Dust without a step: a film that lies open in the room.
  */
 export type MoveCause =
   | { code: 'pinned', by: string | null }
@@ -18,7 +18,7 @@ export type MoveCause =
   | { code: 'hands', name: string | null, step: string, batch: string, added: boolean }
   | { code: 'freed', name: string | null, step: string, batch: string }
   | { code: 'place', kind: PlaceKind }
-  | { code: 'dust', step: string }
+  | { code: 'dust', step: string | null }
   | { code: 'vapour', step: string }
   | { code: 'fits better' }
 

@@ -1,3 +1,4 @@
+import { dustKeptOff } from '~~/server/planning/dust'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId } from '~~/server/planning/lags'
 import type { StepWork } from '~~/server/planning/lags'
@@ -35,6 +36,7 @@ export class MoveCauses {
   private readonly knownBatches: Set<number>
   private readonly pieces: Map<number, PlanFacts['pieces'][number]>
   private readonly shutFrom: Map<string, number>
+  private readonly dustFrom: Map<string, number>
 
   constructor(private readonly compared: Compared) {
     const { facts, given, made, toCome } = compared
@@ -46,6 +48,7 @@ export class MoveCauses {
     this.pieces = new Map(facts.pieces.map(each => [each.id, each]))
     this.knownBatches = new Set(given.works.flatMap(work => work.turns.some(turn => this.last.has(turn.id)) ? [this.batchOf(work)?.batchId ?? 0] : []))
     this.shutFrom = new Map(keptOut(given.works, facts, toCome.shut, given.hands, given.zeroAt).map(lag => [lag.to, lag.min ?? 0]))
+    this.dustFrom = new Map(dustKeptOff(given.works, facts, given.zeroAt).map(lag => [lag.to, lag.min ?? 0]))
   }
 
   /** Why a turn that was to begin at `wasAt` begins at `isAt` (ms UTC). */
@@ -84,6 +87,7 @@ export class MoveCauses {
     const ready = this.compared.ready.get(spot.id)
     if (!ready || ready.at < spot.was + slack) return null
     if (this.shutFrom.get(spot.id) === ready.at) return { code: 'shut room', room: this.roomName(spot.work) ?? '' }
+    if (ready.lag.from === null && this.dustFrom.get(spot.id) === ready.at) return { code: 'dust', step: null }
     if (ready.lag.from === null) return this.film('film later', spot, ready.at)
     return this.before(ready.lag.from, depth) ?? this.film('film later', spot, ready.at)
   }

@@ -43,6 +43,7 @@ export const fields = {
   voc: 'VOC is a number of grams in a litre, from 0 to 2000, or empty.',
   spreadRate: 'The spread rate is a number of square metres a litre covers, or empty.',
   touchDry: 'Touch-dry is a number of minutes, or empty.',
+  turns: 'Name the work to pin: 1 to 200 pieces of it.',
   rule: 'A rule has 1 to 400 characters.',
   statement: 'Write how it is used, where, and what is worn: at least 40 characters.',
   area: 'The surface is a number of square metres above 0, or empty.',

@@ -10,7 +10,7 @@ import { asSentence } from '#shared/words/verdict'
 
 export const moveWords = {
   title: 'What moved',
-  none: 'Nothing has moved noticeably in the last two hours.',
+  more: (count: number) => count === 1 ? 'One more that moved' : `${count} more that moved`,
   threshold: 'Told from half an hour on for the next day, four hours for the week, a day beyond.',
 } as const
 
@@ -46,7 +46,7 @@ export function causeText(why: MoveCause, clock: Clock, units: Units): string {
     case 'hands': return `${why.name ?? 'everybody who may do it'} is at ${lowerFirst(why.step)} of ${why.added ? 'the new batch ' : ''}${why.batch} then${why.name === null ? ' or at other work' : ''}`
     case 'freed': return `${why.name ?? 'somebody'} is free then, since ${lowerFirst(why.step)} of ${why.batch} lies elsewhere now`
     case 'place': return `${places[why.kind]} then`
-    case 'dust': return `dust and wet film do not go together: ${lowerFirst(why.step)} is then`
+    case 'dust': return why.step === null ? 'a film in the room is not free of dust before' : `dust and wet film do not go together: ${lowerFirst(why.step)} is then`
     case 'vapour': return `vapour keeps it apart from ${lowerFirst(why.step)}`
     case 'fits better': return 'it fits better now'
   }

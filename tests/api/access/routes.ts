@@ -77,6 +77,10 @@ export const routes: Record<string, RouteCase> = {
   'materials/[id]/reset.post.ts': { least: 'maker', apart: 'row', at: 'material', body: () => ({ forget: true }) },
   'materials/[id]/tin.post.ts': { least: 'maker', apart: 'row', at: 'material' },
   'coats/[id]/advice.post.ts': { least: 'helper', apart: 'row', at: 'coat', body: () => ({ code: 'blush', answer: 'going on' }) },
+  'plan/index.get.ts': { least: 'helper', apart: 'view' },
+  // A time that has gone by: who may is told so.
+  'pins/index.post.ts': { least: 'maker', apart: 'named', asLeast: 422, body: rows => ({ turnIds: [rows.turn], startsAt: recently(), memberId: null }) },
+  'pins/[id].delete.ts': { least: 'maker', apart: 'row', at: 'pin' },
   'week.get.ts': { least: 'helper', apart: 'view' },
   'air.get.ts': { least: 'helper', apart: 'view' },
   'materials/recent.get.ts': { least: 'helper', apart: 'view' },

@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, subscription: number, material: number, invitationToken: string, calendarToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, turn: number, pin: number, subscription: number, material: number, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -44,6 +44,15 @@ function writeCalls(file: string, room: number, act: number, piece: number) {
   return { ragDuty, reminder, coat }
 }
 
+/** A turn of a batch with a schedule, and a pin that nobody's request can make without a plan. */
+function writePin(file: string, batchId: number) {
+  const db = new Sqlite(file)
+  const turn = db.prepare<[number], number>('select turn.id from turn join piece_step on piece_step.id = turn.step_id join piece on piece.id = piece_step.piece_id where piece.batch_id = ? order by turn.id').pluck().get(batchId) ?? 0
+  const pin = Number(db.prepare('insert into pin (studio_id, turn_id, starts_at, made_at) values (1, ?, ?, ?)').run(turn, Date.now() + 86_400_000, Date.now()).lastInsertRowid)
+  db.close()
+  return { turn, pin }
+}
+
 /** Fills the first studio with a row of everything that has a number in a path. */
 export async function fillStudio(owner: Visitor, databaseFile: string): Promise<Rows> {
   const room = await made(owner, '/api/rooms', roomOf(`${marker} room`))
@@ -70,8 +79,10 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const [material] = (await owner.get<{ id: number }[]>('/api/materials')).body
   if (!material) throw new Error('The first studio has no material.')
   const calls = writeCalls(databaseFile, room.id, seen.body.actId, piece)
+  const planned = await owner.post<{ batchId: number }>('/api/batches', { clientKey: 'access-planned-batch', name: `${marker} bowls`, scheduleId: schedule.id, pieces: [`${marker} bowl`], placeId: place.id, order: null, startsAt: now() })
+  const pinned = writePin(databaseFile, planned.body.batchId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */

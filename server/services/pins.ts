@@ -1,0 +1,95 @@
+import { and, eq, inArray } from 'drizzle-orm'
+import { pin, turn } from '~~/db/schema'
+import { clashSentences } from '~~/server/planning/clashes'
+import { readPlanFacts } from '~~/server/planning/facts'
+import type { PlanFacts } from '~~/server/planning/facts'
+import { activityId } from '~~/server/planning/lags'
+import { pinClash } from '~~/server/planning/pin-check'
+import type { PinStudio, Wanted } from '~~/server/planning/pin-check'
+import { studioProblem } from '~~/server/planning/problem'
+import type { StudioProblem } from '~~/server/planning/problem'
+import type { Solver } from '~~/server/planning/replan'
+import { WaitsToCome } from '~~/server/planning/waits'
+import { memberNames } from '~~/server/services/member-names'
+import { change } from '~~/server/utils/change'
+import type { Database } from '~~/server/utils/database'
+import { absent, conflict, impossible } from '~~/server/utils/errors'
+import type { Refusal } from '~~/server/utils/errors'
+import { usePlanRunner } from '~~/server/utils/planRunner'
+import { owned, scoped } from '~~/server/utils/scoped'
+import type { PinBody } from '#shared/schemas/pin'
+import { studioZone } from '#shared/time'
+import { pinWords } from '#shared/words/pins'
+
+const minute = 60_000
+/** Long enough for a first plan; the best one is made afterwards. */
+const trialMs = 120
+
+const trial: Solver = (key, problem) => usePlanRunner().run(`pin ${key}`, problem, { schedules: 3, millis: trialMs })
+
+/**
+ * Gives some turns a time of their own, one after another. Refused with the sentence that names the clash, before
+ * anything is kept, when it breaks a rule by itself or leaves something else without a start.
+ * @param now ms UTC
+ */
+export async function pinTurns(db: Database, studioId: number, memberId: number, body: PinBody, now: number, solver: Solver = trial): Promise<{ ok: true } | Refusal> {
+  const known = db.select({ id: turn.id, status: turn.status }).from(turn).where(scoped(turn, studioId, inArray(turn.id, body.turnIds))).all()
+  const names = memberNames(db, studioId)
+  if (known.length < new Set(body.turnIds).size || (body.memberId !== null && !names.has(body.memberId))) return absent()
+  if (known.some(each => each.status !== 'waiting')) return conflict(pinWords.begun)
+  const read = readPlanFacts(db, studioId)
+  if (!read) return absent()
+  const facts: PlanFacts = { ...read, pins: read.pins.filter(each => !body.turnIds.includes(each.turnId)) }
+  const toCome = new WaitsToCome(db, facts, now)
+  const given = studioProblem(facts, toCome, now)
+  const studio: PinStudio = { facts, given, toCome, names, clock: { now, zone: studioZone(facts.owner.zone) } }
+  const startsAt = Date.parse(body.startsAt)
+  if (startsAt < given.zeroAt) return impossible(pinWords.past(given.zeroAt, studio.clock), { startsAt: pinWords.past(given.zeroAt, studio.clock) })
+  const wanted = wishes(studio, body, startsAt)
+  if (wanted === null) return impossible(pinWords.notPlanned)
+  const clash = pinClash(studio, wanted) ?? await trialClash(studioId, given, wanted, solver)
+  if (clash !== null) return impossible(clash, { startsAt: clash })
+  return change(db, studioId, 'work', (tx): { ok: true } => {
+    tx.delete(pin).where(scoped(pin, studioId, inArray(pin.turnId, body.turnIds))).run()
+    tx.insert(pin).values(wanted.map(each => ({ studioId, turnId: each.turnId, startsAt: given.zeroAt + each.start * minute, memberId: each.hands[0] ? Number(each.hands[0].slice(1)) : null, madeAt: now, madeByMemberId: memberId }))).run()
+    return { ok: true }
+  })
+}
+
+/** The turns in a row from an instant on, in the order the plan has them, with the hands it gave them or those asked for; null when one of them has no place in the plan. */
+function wishes({ facts, given }: PinStudio, { turnIds, memberId }: PinBody, startsAt: number): Wanted[] | null {
+  const last = new Map(facts.last.map(entry => [entry.turnId, entry]))
+  const order = [...new Set(turnIds)].sort((a, b) => (last.get(a)?.startsAt ?? 0) - (last.get(b)?.startsAt ?? 0) || a - b)
+  let start = Math.round((startsAt - given.zeroAt) / minute)
+  const found = order.map((turnId): Wanted | null => {
+    const activity = given.problem.activities.find(each => each.id === activityId(turnId))
+    if (!activity) return null
+    const wish = memberId ?? last.get(turnId)?.memberId ?? null
+    const able = activity.choices[0]?.of ?? []
+    const hands = [...able].sort((a, b) => Number(b === `m${wish}`) - Number(a === `m${wish}`)).slice(0, activity.choices[0]?.count ?? 0)
+    const each = { turnId, start, end: start + activity.minutes, hands }
+    start = each.end
+    return each
+  })
+  return found.includes(null) ? null : found.flatMap(each => each ?? [])
+}
+
+/** What else would be left without a start, or miss its window, were it so. */
+async function trialClash(studioId: number, given: StudioProblem, wanted: readonly Wanted[], solver: Solver): Promise<string | null> {
+  const fixed = [...given.problem.fixed.filter(each => !wanted.some(wish => activityId(wish.turnId) === each.activity)), ...wanted.map(each => ({ activity: activityId(each.turnId), start: each.start, resources: each.hands }))]
+  const before = await solver(String(studioId), given.problem, () => {})
+  const after = await solver(String(studioId), { ...given.problem, fixed }, () => {})
+  if (!before.ok || !after.ok) return pinWords.noPlanWithIt
+  const known = new Set(clashSentences(before.plan, given))
+  return clashSentences(after.plan, given).find(each => !known.has(each)) ?? null
+}
+
+/** Lets turns go again that were pinned together with this one. */
+export function unpin(db: Database, studioId: number, id: number): { ok: true } | Refusal {
+  return change(db, studioId, 'work', (tx): { ok: true } | Refusal => {
+    const row = tx.select().from(pin).where(owned(pin, studioId, id)).get()
+    if (!row) return absent()
+    tx.delete(pin).where(row.madeAt === null ? owned(pin, studioId, id) : and(scoped(pin, studioId, eq(pin.madeAt, row.madeAt)))).run()
+    return { ok: true }
+  })
+}

@@ -1,0 +1,83 @@
+import type { Objective } from '#shared/planning/types'
+import type { PlanBlock, PlanDay, PlanStrip } from '#shared/schemas/plan'
+import { clockFace, clockTime, localDate, roughTime, span } from '#shared/time'
+import type { Clock } from '#shared/time'
+import { groupNames } from '#shared/words/group'
+import { stepNoun } from '#shared/words/steps'
+import { asSentence } from '#shared/words/verdict'
+import { weekdayText } from '#shared/words/week'
+
+export const planStrips = {
+  title: 'The plan',
+  waiting: 'Fetching the plan',
+  failed: 'The plan could not be fetched.',
+  none: 'Nothing is planned yet.',
+  noneSays: 'As soon as a batch has work for hands, it stands here by the hour.',
+  people: 'Hands',
+  places: 'Places',
+  list: 'The plan as a list',
+  placeList: 'The places as a list',
+  earlierDays: 'Earlier days',
+  laterDays: 'Later days',
+  how: 'Press a piece of work to pin it, or drag it to its time.',
+  free: 'nothing planned',
+  pinned: 'pinned',
+  doing: 'in hand',
+  objective: 'What the plan costs',
+  breakdown: 'The plan weighs these in this order; the first that differs decides.',
+  change: (title: string) => `Pin ${title}`,
+} as const
+
+export const pinDialog = {
+  here: 'Pin here',
+  earlier: '15 min earlier',
+  later: '15 min later',
+  day: 'Day',
+  time: 'Time',
+  to: 'Pin to this time',
+  unpin: 'Unpin',
+  hands: 'Whose hands',
+  asPlanned: 'As planned',
+  doing: 'It is in hand: it stays where it is.',
+  notYours: 'Owners and makers pin the plan.',
+  noTime: 'Give a day and a time.',
+  done: (title: string, at: string) => `${title} is pinned at ${at}. The rest of the plan follows.`,
+  gone: (title: string) => `${title} is no longer pinned. The plan is made anew.`,
+  moving: (at: string) => `to ${at}`,
+} as const
+
+/** "Light sanding, Boxes 1–4". */
+export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${asSentence(kind === 'work' ? stepNoun(stepKind, step) : step).slice(0, -1)}, ${groupNames(pieces)}`
+
+/** "9:15 to 10:40", with the day when it is another. */
+export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${clockFace(clock.zone.wall(toAt).minutes)}`
+
+/** What is known of a block beside its time, one sentence each. */
+export function blockNotes(block: PlanBlock, clock: Clock): string[] {
+  return [
+    block.readyAt === null || block.readyAt <= clock.now ? 'What it waits for is ready.' : `Ready from ${roughTime(block.readyAt, clock, 'up')}.`,
+    ...block.lastStartAt === null ? [] : [`Last moment to start: ${clockTime(block.lastStartAt, clock)}.`],
+  ]
+}
+
+/** "Boxes 1–4, till Wed 9:00; dry from Tue 16:30". */
+export function stripText({ pieces, toAt, dryAt, fromAt, lies }: PlanStrip, clock: Clock): string {
+  const until = toAt === null ? 'nothing planned after' : `till ${clockTime(toAt, clock)}`
+  const ready = dryAt === null || dryAt <= clock.now ? [] : [`ready for what follows from ${roughTime(dryAt, clock, 'up')}`]
+  return [`${groupNames(pieces)}: ${lies ? '' : `from ${clockTime(fromAt, clock)} `}${until}`, ...ready].join('; ')
+}
+
+export const dayText = (day: PlanDay, clock: Clock) => day.date === localDate(clock.now, clock.zone) ? `${weekdayText(day.weekday)}, today` : weekdayText(day.weekday)
+
+/** The objective's parts as rows: what, how much. Lateness counts each batch by its order's weight. */
+export function objectiveRows({ windowsMissed, lateness, setup, waiting }: Objective): { what: string, figure: string }[] {
+  return [
+    { what: 'Windows missed, each with its recovery', figure: windowsMissed === 0 ? 'none' : String(Math.round(windowsMissed)) },
+    { what: 'Lateness of all batches together', figure: lateness === 0 ? 'none' : longSpan(lateness) },
+    { what: 'Setting up and cleaning up', figure: longSpan(setup) },
+    { what: 'Waiting of all pieces together, once ready', figure: longSpan(waiting) },
+  ]
+}
+
+/** "40 min", "9 h", "3 days": minutes. */
+export const longSpan = (minutes: number) => minutes < 60 ? span(minutes) : minutes < 48 * 60 ? `${Math.round(minutes / 60)} h` : `${Math.round(minutes / 1440)} days`
