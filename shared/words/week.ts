@@ -17,6 +17,8 @@ export const weekWords = {
   today: 'today',
   freeAllWeek: (names: readonly string[]) => `Free all week: ${listed(names).toLowerCase()}.`,
   perDay: 'Places: the fullest moment of the day. People: hours still planned against hours still there.',
+  waitsFor: (time: string) => `${time} waiting`,
+  waitsKey: 'Waiting: what pieces that are ready wait for it, all pieces together.',
   batches: 'Batches against their dates',
   noBatches: 'No batch is under way.',
   noBatchesSays: 'Start a batch, and its planned end shows here against its date.',
@@ -157,3 +159,6 @@ export function evidenceSentences({ standing, oldestSeenAt, missing, unread, old
     ...unread.length === 0 ? [] : [`Nobody has noted the air in ${listed(unread)}.`],
   ]
 }
+
+/** "Wednesday" of a date YYYY-MM-DD. */
+export const weekdayOfDate = (date: string) => weekdayText(weekdayOf(date))

@@ -80,6 +80,9 @@ export const routes: Record<string, RouteCase> = {
   'plan/index.get.ts': { least: 'helper', apart: 'view' },
   // A time that has gone by: who may is told so.
   'pins/index.post.ts': { least: 'maker', apart: 'named', asLeast: 422, body: rows => ({ turnIds: [rows.turn], startsAt: recently(), memberId: null }) },
+  'plan/bottleneck.get.ts': { least: 'helper', apart: 'view' },
+  // The first studio's batch is for no order: who may is told that it has no date to move.
+  'plan/what-if.post.ts': { least: 'maker', apart: 'named', asLeast: 422, body: rows => ({ kind: 'due', batchId: rows.batch, dueAt: new Date(Date.now() + 86_400_000).toISOString() }) },
   'pins/[id].delete.ts': { least: 'maker', apart: 'row', at: 'pin' },
   'week.get.ts': { least: 'helper', apart: 'view' },
   'air.get.ts': { least: 'helper', apart: 'view' },

@@ -1,0 +1,71 @@
+import type { HoursWire } from '#shared/schemas/hours'
+import type { Difference, WhatIf, WhatIfKind } from '#shared/schemas/what-if'
+import { fromWire } from '#shared/schemas/wire'
+import type { Wire } from '#shared/schemas/wire'
+import type { WeekState } from '#shared/schemas/week'
+import type { PlaceKind } from '#shared/terms'
+import { fromLocal } from '#shared/time'
+import type { Clock } from '#shared/time'
+import type { Units } from '#shared/units'
+import { toCelsius } from '#shared/units'
+
+interface Rooms { id: number, name: string }
+
+/** What is being tried on a copy of the plan: the wish as it is typed, the difference it makes, and keeping it where that means something. */
+export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () => Units) {
+  const { busy, message, fields, submit } = useSubmit()
+  const { busy: keeping, message: refused, submit: send } = useSubmit()
+  const wish = reactive({
+    kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: null as number | null,
+    weekday: 6 as number | null, from: '09:00', to: '15:00', memberId: null as number | null, batchId: null as number | null, day: '', time: '12:00',
+  })
+  const rooms = shallowRef<Rooms[]>([])
+  const answer = shallowRef<Difference | null>(null)
+  const asked = shallowRef<WhatIf | null>(null)
+
+  async function open() {
+    if (rooms.value.length === 0) rooms.value = await callApi<Rooms[]>('/api/rooms').catch(() => [])
+  }
+  const minutes = (text: string) => {
+    const [hours = NaN, rest = NaN] = text.split(':').map(Number)
+    return hours * 60 + rest
+  }
+  const hours = () => ({ weekday: wish.weekday ?? 0, fromMin: minutes(wish.from), toMin: minutes(wish.to) })
+
+  function body(): WhatIf {
+    switch (wish.kind) {
+      case 'places': return { kind: 'places', placeKind: wish.placeKind ?? week().places[0]?.kind ?? 'shelf', more: wish.more ?? 0 }
+      case 'humidity': return { kind: 'humidity', roomId: wish.roomId ?? 0, rh: (wish.rh ?? 0) / 100 }
+      case 'heat': return { kind: 'heat', roomId: wish.roomId ?? 0, tempC: wish.temp === null ? NaN : toCelsius(wish.temp, units()) }
+      case 'open day': return { kind: 'open day', ...hours() }
+      case 'hours of': return { kind: 'hours of', memberId: wish.memberId ?? 0, ...hours() }
+      case 'due': return { kind: 'due', batchId: wish.batchId ?? 0, dueAt: /^\d{4}-\d{2}-\d{2}$/.test(wish.day) ? new Date(fromLocal(wish.day, minutes(wish.time) || 0, clock().zone)).toISOString() : '' }
+    }
+  }
+
+  async function ask() {
+    const sent = body()
+    answer.value = null
+    const found = await submit(() => callApi<Wire<{ difference: Difference }>>('/api/plan/what-if', { method: 'POST', body: sent }))
+    if (!found) return
+    asked.value = sent
+    answer.value = fromWire<{ difference: Difference }>(found).difference
+  }
+
+  /** Keeps the hours that were tried; true when they are kept. */
+  async function keep(): Promise<boolean> {
+    const tried = asked.value
+    if (tried?.kind !== 'open day' && tried?.kind !== 'hours of') return false
+    const memberId = tried.kind === 'hours of' ? tried.memberId : null
+    const done = await send(async () => {
+      const known = await callApi<HoursWire>('/api/hours')
+      const own = memberId === null ? known.studio : known.members.find(each => each.memberId === memberId)?.hours ?? known.studio
+      const kept = [...own.filter(each => each.weekday !== tried.weekday), { weekday: tried.weekday, fromMin: tried.fromMin, toMin: tried.toMin }]
+      return callApi('/api/hours', { method: 'PUT', body: { memberId, hours: kept } })
+    })
+    if (done !== null) answer.value = null
+    return done !== null
+  }
+  watch(wish, () => { answer.value = null })
+  return { wish, rooms, answer, asked, busy, message, fields, keeping, refused, open, ask, keep }
+}

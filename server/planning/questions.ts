@@ -1,0 +1,84 @@
+import { changedProblem } from '~~/server/planning/changed-facts'
+import type { Changed } from '~~/server/planning/changed-facts'
+import type { Database } from '~~/server/utils/database'
+import { impossible, isRefusal } from '~~/server/utils/errors'
+import type { Refusal } from '~~/server/utils/errors'
+import { usePlanRunner } from '~~/server/utils/planRunner'
+import { startsOf } from '#shared/planning/types'
+import type { Plan, PlanProblem } from '#shared/planning/types'
+import type { BatchFare, Difference, WhatIf } from '#shared/schemas/what-if'
+import { whatIfWords } from '#shared/words/what-if'
+
+const minute = 60_000
+/** One search of a question: so short that a page of them is answered in two seconds. */
+export const questionMs = 280
+
+/** Solves a copy of a problem under a small budget; null when it did not come to an end. */
+export type Asker = (studioId: number, problem: PlanProblem) => Promise<Plan | null>
+
+let asked = 0
+/** In the worker; each question has a key of its own, so that none ends another. */
+export const inWorker: Asker = async (studioId, problem) => {
+  const done = await usePlanRunner().run(`question ${studioId} ${++asked}`, problem, { millis: questionMs })
+  return done.ok && done.broken.length === 0 ? done.plan : null
+}
+
+/** The studio as it is: its problem, a plan to begin from, and that plan searched once more, which is what every change is measured against. */
+export interface Base { changed: Changed, from: Plan, plan: Plan }
+
+/** A copy that begins from a plan and asks no price for moving: what a change makes possible counts, not how far it is from the plan of now. */
+export const copyFrom = (problem: PlanProblem, from: Pick<Plan, 'entries'> | null): PlanProblem => ({
+  ...problem, weights: { ...problem.weights, moves: 0 },
+  previous: from === null ? problem.previous : Object.fromEntries(Object.entries(startsOf(from as Plan)).filter(([id]) => problem.activities.some(each => each.id === id))),
+})
+
+/**
+ * What changes are measured against. It is searched as often as they will be and from the same plan, so that a difference
+ * is never the fruit of a longer search.
+ */
+export async function baseOf(db: Database, studioId: number, now: number, ask: Asker = inWorker): Promise<Base | Refusal> {
+  const changed = changedProblem(db, studioId, null, now)
+  if (isRefusal(changed)) return changed
+  if (changed.given.problem.activities.length === 0) return impossible(whatIfWords.nothingPlanned)
+  const from = await ask(studioId, copyFrom(changed.given.problem, null))
+  const plan = from && await ask(studioId, copyFrom(changed.given.problem, from))
+  return from && plan ? { changed, from, plan: betterOf(from, plan) } : impossible(whatIfWords.notAnswered)
+}
+
+/** Of two plans of one problem the one with fewer left out, then the cheaper. */
+function betterOf(one: Plan, other: Plan): Plan {
+  return other.unplaced.length < one.unplaced.length || (other.unplaced.length === one.unplaced.length && other.cost < one.cost) ? other : one
+}
+
+/** What one change makes of the plan, row by row; nothing is kept. */
+export async function whatIf(studioId: number, change: WhatIf, changed: Changed, base: Base, ask: Asker = inWorker): Promise<{ ok: true, difference: Difference } | Refusal> {
+  const solved = await ask(studioId, copyFrom(changed.given.problem, base.from))
+  if (!solved) return impossible(whatIfWords.notAnswered)
+  // More room or more hours take nothing away: the plan of before would still do.
+  const plan = change.kind === 'places' ? orBefore(solved, base.plan) : solved
+  return { ok: true, difference: differenceOf(base, changed, plan) }
+}
+
+export const orBefore = (after: Plan, before: Plan): Plan => betterOf(before, after)
+
+/** How every batch fares in two plans. */
+export function differenceOf(base: Base, after: Changed, plan: Plan): Difference {
+  const before = endsOf(base.changed, base.plan)
+  const then = endsOf(after, plan)
+  const names = new Map(base.changed.facts.pieces.map(piece => [piece.batchId, piece]))
+  const due = new Map(after.facts.pieces.map(piece => [piece.batchId, piece.dueAt]))
+  return {
+    batches: [...names].map(([batchId, piece]): BatchFare => ({ batchId, name: piece.batch, dueAt: due.get(batchId) ?? null, beforeAt: before.get(batchId) ?? null, afterAt: then.get(batchId) ?? null })).filter(each => each.beforeAt !== null || each.afterAt !== null),
+    windowsBefore: base.plan.objective.windowsMissed, windowsAfter: plan.objective.windowsMissed, latenessBefore: base.plan.objective.lateness, latenessAfter: plan.objective.lateness,
+  }
+}
+
+/** The end of each batch, ms UTC; null while something of it has no start. */
+function endsOf({ given }: Changed, plan: Plan): Map<number, number | null> {
+  const ends = new Map(plan.entries.map(entry => [entry.activity, entry.end]))
+  return new Map(given.problem.jobs.map((job) => {
+    const own = job.activities.map(id => ends.get(id) ?? null)
+    return [Number(job.id.slice('batch '.length)), own.includes(null) ? null : given.zeroAt + Math.max(...own.flatMap(end => end ?? [])) * minute]
+  }))
+}
+

@@ -1,0 +1,132 @@
+import type { BatchFare, BottleneckState, Difference, OneMore } from '#shared/schemas/what-if'
+import type { PlaceKind } from '#shared/terms'
+import { ago, clockTime } from '#shared/time'
+import type { Clock } from '#shared/time'
+import { listText } from '#shared/words/group'
+import { longSpan } from '#shared/words/plan-strips'
+import { placeKindsText, weekdayOfDate } from '#shared/words/week'
+
+export const whatIfWords = {
+  title: 'What would change it',
+  hint: 'Tried on a copy of the plan. Nothing is kept unless you say so.',
+  ask: 'Try it',
+  asking: 'Trying it on a copy',
+  what: 'What to try',
+  kinds: { 'places': 'More places', 'humidity': 'Other humidity', 'heat': 'A warmer or cooler room', 'open day': 'Open on another day', 'hours of': 'Somebody’s hours', 'due': 'Another date' },
+  placeKind: 'Of which kind',
+  more: 'How many more',
+  room: 'Room',
+  rh: 'Humidity, held',
+  temp: 'Temperature, held',
+  weekday: 'Day',
+  from: 'From',
+  to: 'To',
+  who: 'Who',
+  batch: 'Batch',
+  day: 'New date',
+  time: 'Time',
+  batchColumn: 'Batch',
+  before: 'As it is',
+  after: 'With it',
+  difference: 'Difference',
+  noTime: 'no time',
+  same: 'no change',
+  apply: 'Keep these hours',
+  applied: 'The hours are kept. The plan is made anew.',
+  addPlace: 'If you get them, give them a place in Settings; the plan then counts on them.',
+  air: 'Set it in the room and note the air; the plan follows what is read.',
+  date: 'Agree it first with whom the order is for; here only the plan was asked.',
+  ownerOnly: 'The owner keeps hours.',
+  noSuchPlace: 'There is no place of that kind to have more of.',
+  noAir: (room: string) => `Nobody has noted the air in ${room}, so there is nothing to compare with.`,
+  noOrder: 'This batch is for no order, so it has no date to move.',
+  nothingPlanned: 'Nothing is planned, so nothing would change.',
+  notAnswered: 'The planner found no answer in time. Try again in a moment.',
+  solventWet: (room: string) => `A solvent film is drying in ${room}. Heaters, dehumidifiers and fans are not tried there: they can light the vapour.`,
+  solventPlanned: (room: string) => `Solvent work is planned in ${room}. Heaters, dehumidifiers and fans are not tried there: they can light the vapour.`,
+} as const
+
+export const bottleneckWords = {
+  asking: 'Working out what holds the plan back',
+  failed: 'What holds the plan back could not be worked out.',
+  title: 'What pieces wait for, once ready',
+  oneMore: 'With one more of each',
+  free: (day: string) => `${day}: nothing`,
+} as const
+
+const hands = 'another pair of hands'
+const oneOf: Record<PlaceKind, string> = { 'shelf': 'one more place on a shelf', 'rail': 'one more place on a rail', 'hook': 'one more hook', 'turntable': 'one more turntable', 'rack': 'one more place on a rack', 'clamps': 'one more clamp', 'press': 'one more place in a press', 'bench': 'one more place on a bench', 'booth': 'one more place in a booth', 'drying cabinet': 'one more place in a cabinet', 'floor': 'one more place on the floor' }
+export const oneMoreText = (kind: PlaceKind | null) => kind === null ? hands : oneOf[kind]
+
+const capital = (words: string) => words.charAt(0).toUpperCase() + words.slice(1)
+const holds = (kind: PlaceKind | null) => kind === null ? 'Hands hold the plan back.' : ['press', 'booth', 'drying cabinet', 'floor'].includes(kind) ? `The ${kind} holds the plan back.` : `${placeKindsText(kind)} hold the plan back.`
+
+/** Half an hour is the least that anybody would do something for (planning value), ms. */
+const noticed = 30 * 60_000
+
+export const gainOf = ({ beforeAt, afterAt }: BatchFare) => beforeAt === null || afterAt === null ? 0 : beforeAt - afterAt
+
+/** The batch that a change moves furthest forward, or null when none is noticeably sooner. */
+export function mostSooner({ batches }: Difference): BatchFare | null {
+  const best = [...batches].sort((a, b) => gainOf(b) - gainOf(a))[0]
+  return best && gainOf(best) >= noticed ? best : null
+}
+
+/** Whether a change does anything worth saying. */
+export const isWorth = (difference: Difference) => difference.windowsAfter < difference.windowsBefore || difference.latenessBefore - difference.latenessAfter >= 30 || mostSooner(difference) !== null
+
+function daysWaited({ waitedMin }: OneMore, days: readonly string[]): string {
+  const most = Math.max(...waitedMin)
+  const named = days.flatMap((date, index) => (waitedMin[index] ?? 0) >= Math.max(30, most / 2) ? [weekdayOfDate(date)] : [])
+  return named.length === 0 || named.length === days.length ? '' : ` on ${listText(named)}`
+}
+
+/** "Clamps hold the plan back." with what pieces wait, what one more would buy, and for which batch. Only what was reckoned. */
+export function bottleneckSentence(state: BottleneckState, clock: Clock): { head: string, rest: string } {
+  const first = state.more.find(each => isWorth(each.difference))
+  if (!first) return { head: 'No single shortage holds the plan back.', rest: 'With one more of anything it would end much as it does: drying and hours set the pace.' }
+  const { difference } = first
+  const waited = first.waitedMin.reduce((sum, each) => sum + each, 0)
+  const wait = waited < 30 ? [] : [`Pieces that are ready wait ${longSpan(waited)} in all for ${first.kind === null ? 'hands' : 'them'}${daysWaited(first, state.days)}.`]
+  const batch = mostSooner(difference)
+  const buys = [
+    ...batch?.beforeAt != null && batch.afterAt !== null ? [`finish ${batch.name} ${clockTime(batch.afterAt, clock)} instead of ${clockTime(batch.beforeAt, clock)}`] : [],
+    ...difference.latenessBefore - difference.latenessAfter >= 30 ? [`take ${longSpan(difference.latenessBefore - difference.latenessAfter)} off the lateness of all batches together`] : [],
+    ...difference.windowsAfter < difference.windowsBefore ? [difference.windowsAfter === 0 ? 'let every window be kept' : `let ${difference.windowsBefore - difference.windowsAfter} more windows be kept`] : [],
+  ]
+  return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${listText(buys)}.`].join(' ') }
+}
+
+const aWeek = 7 * 86_400_000
+
+/** How old what the sentence rests on is: the plan, and when the places it names were last looked at. */
+export function bottleneckEvidence(state: BottleneckState, now: number): string[] {
+  if (state.planMadeAt === null) return []
+  const first = state.more.find(each => isWorth(each.difference))
+  const seen = first?.kind == null ? null : state.seen.find(each => each.kind === first.kind) ?? null
+  return [
+    `Reckoned on the plan made ${ago(state.planMadeAt, now)}, by planning a copy with one more of each.`,
+    ...seen?.oldestAt != null ? [now - seen.oldestAt > aWeek ? `Nobody has walked round all ${placeKindsText(seen.kind).toLowerCase()} for ${longSpan((now - seen.oldestAt) / 60_000)}: look first whether they are as full as it says here.` : `What stands there was last looked at ${ago(seen.oldestAt, now)} or later.`] : [],
+  ]
+}
+
+/** "9 h sooner", "1 day later", "no change". */
+export function fareText(fare: BatchFare): string {
+  if (fare.beforeAt === null && fare.afterAt !== null) return 'now finds its time'
+  if (fare.beforeAt !== null && fare.afterAt === null) return 'no longer finds its time'
+  const gain = gainOf(fare)
+  return Math.abs(gain) < noticed ? whatIfWords.same : `${longSpan(Math.abs(gain) / 60_000)} ${gain > 0 ? 'sooner' : 'later'}`
+}
+
+/** What a change does to the whole, in one or two sentences. */
+export function differenceText({ windowsBefore, windowsAfter, latenessBefore, latenessAfter, batches }: Difference): string {
+  const less = latenessBefore - latenessAfter
+  const lateness = Math.abs(less) < 30 ? latenessAfter === 0 ? 'No batch is late, with it or without.' : 'Lateness stays as it is.' : `All batches together are ${longSpan(Math.abs(less))} ${less > 0 ? 'less' : 'more'} late${latenessAfter === 0 ? ': none is late any more' : ''}.`
+  const windows = windowsAfter === windowsBefore ? [] : [windowsAfter < windowsBefore ? `${windowsBefore - windowsAfter} fewer missed.` : `${windowsAfter - windowsBefore} more missed.`].map(each => `Windows: ${each}`)
+  const moved = batches.filter(each => Math.abs(gainOf(each)) >= noticed).length
+  return [lateness, ...windows, moved === 0 ? 'No batch ends noticeably otherwise.' : `${moved === 1 ? 'One batch ends' : `${moved} batches end`} otherwise.`].join(' ')
+}
+
+/** What is waited for, in a row's head. */
+export const waitedText = (what: BottleneckState['waited'][number]['for']) => what === 'hands' ? 'Hands' : what === 'hours' ? 'Opening hours' : what === 'other' ? 'Dust, vapour, like work' : placeKindsText(what)
+export const waitText = (minutes: number) => minutes < 15 ? '–' : longSpan(minutes)
