@@ -1,5 +1,5 @@
 import type { HoursWire } from '#shared/schemas/hours'
-import type { Difference, WhatIf, WhatIfKind } from '#shared/schemas/what-if'
+import type { WhatIf, WhatIfAnswer, WhatIfKind } from '#shared/schemas/what-if'
 import { fromWire } from '#shared/schemas/wire'
 import type { Wire } from '#shared/schemas/wire'
 import type { WeekState } from '#shared/schemas/week'
@@ -20,7 +20,7 @@ export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () =
     weekday: 6 as number | null, from: '09:00', to: '15:00', memberId: null as number | null, batchId: null as number | null, day: '', time: '12:00',
   })
   const rooms = shallowRef<Rooms[]>([])
-  const answer = shallowRef<Difference | null>(null)
+  const answer = shallowRef<WhatIfAnswer | null>(null)
   const asked = shallowRef<WhatIf | null>(null)
 
   async function open() {
@@ -46,10 +46,10 @@ export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () =
   async function ask() {
     const sent = body()
     answer.value = null
-    const found = await submit(() => callApi<Wire<{ difference: Difference }>>('/api/plan/what-if', { method: 'POST', body: sent }))
+    const found = await submit(() => callApi<Wire<WhatIfAnswer>>('/api/plan/what-if', { method: 'POST', body: sent }))
     if (!found) return
     asked.value = sent
-    answer.value = fromWire<{ difference: Difference }>(found).difference
+    answer.value = fromWire<WhatIfAnswer>(found)
   }
 
   /** Keeps the hours that were tried; true when they are kept. */

@@ -5,6 +5,7 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { waitedFor } from '#shared/planning/waited'
 import type { Interval, PlanProblem } from '#shared/planning/types'
 import type { BottleneckState, OneMore } from '#shared/schemas/what-if'
+import { gainedTimes, lessLate } from '#shared/what-if'
 import { placeKinds } from '#shared/terms'
 import type { PlaceKind } from '#shared/terms'
 import { addDays, fromLocal, localDate, studioZone } from '#shared/time'
@@ -56,8 +57,11 @@ export async function bottleneckOf(studioId: number, base: Base, now: number, as
   return { days: dates, waited, more: more.sort((a, b) => gain(b) - gain(a)) }
 }
 
-/** Minutes bought, a window missed counting as a week. */
-function gain({ difference: { windowsBefore, windowsAfter, latenessBefore, latenessAfter, batches } }: OneMore): number {
+const aWeek = 7 * 24 * 60
+
+/** Minutes bought, a window missed or a batch without a time counting as a week. */
+function gain({ difference }: OneMore): number {
+  const { windowsBefore, windowsAfter, batches } = difference
   const sooner = batches.reduce((sum, { beforeAt, afterAt }) => sum + (beforeAt !== null && afterAt !== null ? beforeAt - afterAt : 0), 0) / minute
-  return (windowsBefore - windowsAfter) * 7 * 24 * 60 + (latenessBefore - latenessAfter) + sooner / 100
+  return (windowsBefore - windowsAfter) * aWeek + gainedTimes(difference).length * aWeek + (lessLate(difference) ?? 0) + sooner / 100
 }

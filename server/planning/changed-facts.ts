@@ -32,7 +32,17 @@ function undone<T>(db: Database, work: (tx: Transaction) => T): T {
   return kept.result as T
 }
 
-export interface Changed { facts: PlanFacts, given: StudioProblem }
+/** `caution`: what must be done before the change may last. */
+export interface Changed { facts: PlanFacts, given: StudioProblem, caution: string | null }
+
+const aDay = 24 * 60 * 60_000
+
+/** When the plan in force first puts solvent on in a room, ms UTC; 0 where it is to come and nobody knows when. */
+function firstSolvent(facts: PlanFacts, given: StudioProblem, roomId: number): number | null {
+  const starts = new Map(facts.last.map(entry => [entry.turnId, entry.startsAt]))
+  const turns = given.works.filter(work => work.roomId === roomId && facts.vapour.solventVersions.has(work.step.materialVersionId ?? 0)).flatMap(work => work.turns.filter(turn => turn.kind === 'work'))
+  return turns.length === 0 ? null : Math.min(...turns.map(turn => starts.get(turn.id) ?? 0))
+}
 
 /**
  * The planner's problem as it would be after one change, from the same rows and reckoning as ever: the change is made,
@@ -50,7 +60,10 @@ export function changedProblem(db: Database, studioId: number, change: WhatIf | 
     if (!facts) return absent(whatIfWords.noSuchPlace)
     const given = studioProblem(facts, new WaitsToCome(db, facts, now), now)
     const airRoom = change?.kind === 'heat' || change?.kind === 'humidity' ? change.roomId : null
-    return airRoom !== null && given.works.some(({ roomId, step }) => roomId === airRoom && facts.vapour.solventVersions.has(step.materialVersionId ?? 0)) ? impossible(whatIfWords.solventPlanned(facts.vapour.rooms.get(airRoom)?.name ?? '')) : { facts, given }
+    const planned = airRoom === null ? null : firstSolvent(facts, given, airRoom)
+    const name = facts.vapour.rooms.get(airRoom ?? 0)?.name ?? ''
+    if (planned !== null && planned < now + aDay) return impossible(whatIfWords.solventPlanned(name))
+    return { facts, given, caution: planned === null ? null : whatIfWords.solventLater(name) }
   })
 }
 

@@ -6,7 +6,7 @@ import type { Refusal } from '~~/server/utils/errors'
 import { usePlanRunner } from '~~/server/utils/planRunner'
 import { startsOf } from '#shared/planning/types'
 import type { Plan, PlanProblem } from '#shared/planning/types'
-import type { BatchFare, Difference, WhatIf } from '#shared/schemas/what-if'
+import type { BatchFare, Difference, WhatIf, WhatIfAnswer } from '#shared/schemas/what-if'
 import { whatIfWords } from '#shared/words/what-if'
 
 const minute = 60_000
@@ -51,12 +51,12 @@ function betterOf(one: Plan, other: Plan): Plan {
 }
 
 /** What one change makes of the plan, row by row; nothing is kept. */
-export async function whatIf(studioId: number, change: WhatIf, changed: Changed, base: Base, ask: Asker = inWorker): Promise<{ ok: true, difference: Difference } | Refusal> {
+export async function whatIf(studioId: number, change: WhatIf, changed: Changed, base: Base, ask: Asker = inWorker): Promise<WhatIfAnswer | Refusal> {
   const solved = await ask(studioId, copyFrom(changed.given.problem, base.from))
   if (!solved) return impossible(whatIfWords.notAnswered)
   // More room or more hours take nothing away: the plan of before would still do.
   const plan = change.kind === 'places' ? orBefore(solved, base.plan) : solved
-  return { ok: true, difference: differenceOf(base, changed, plan) }
+  return { ok: true, difference: differenceOf(base, changed, plan), caution: changed.caution }
 }
 
 export const orBefore = (after: Plan, before: Plan): Plan => betterOf(before, after)

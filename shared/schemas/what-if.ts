@@ -27,6 +27,9 @@ export interface BatchFare { batchId: number, name: string, dueAt: number | null
 /** What a change makes of the plan. `lateness` in weighted minutes, as the objective counts it. */
 export interface Difference { batches: BatchFare[], windowsBefore: number, windowsAfter: number, latenessBefore: number, latenessAfter: number }
 
+/** POST /api/plan/what-if answers: the difference, and what must be done before the change may last. */
+export interface WhatIfAnswer { ok: true, difference: Difference, caution: string | null }
+
 /** One more of a resource, and what it would buy. `kind` null: one more pair of hands in the studio's hours. */
 export interface OneMore { kind: PlaceKind | null, waitedMin: number[], difference: Difference }
 

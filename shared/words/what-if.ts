@@ -1,3 +1,4 @@
+import { gainOf, gainedTimes, isNoticeable, isWorth, lessLate, mostSooner } from '#shared/what-if'
 import type { BatchFare, BottleneckState, Difference, OneMore } from '#shared/schemas/what-if'
 import type { PlaceKind } from '#shared/terms'
 import { ago, clockTime } from '#shared/time'
@@ -43,7 +44,8 @@ export const whatIfWords = {
   nothingPlanned: 'Nothing is planned, so nothing would change.',
   notAnswered: 'The planner found no answer in time. Try again in a moment.',
   solventWet: (room: string) => `A solvent film is drying in ${room}. Heaters, dehumidifiers and fans are not tried there: they can light the vapour.`,
-  solventPlanned: (room: string) => `Solvent work is planned in ${room}. Heaters, dehumidifiers and fans are not tried there: they can light the vapour.`,
+  solventLater: (room: string) => `Solvent work is planned in ${room} later. Before it begins, and till its vapour is gone, heaters, dehumidifiers and fans are off there.`,
+  solventPlanned: (room: string) => `Solvent work is planned in ${room} within a day. Heaters, dehumidifiers and fans are not tried there: they can light the vapour.`,
 } as const
 
 export const bottleneckWords = {
@@ -61,20 +63,6 @@ export const oneMoreText = (kind: PlaceKind | null) => kind === null ? hands : o
 const capital = (words: string) => words.charAt(0).toUpperCase() + words.slice(1)
 const holds = (kind: PlaceKind | null) => kind === null ? 'Hands hold the plan back.' : ['press', 'booth', 'drying cabinet', 'floor'].includes(kind) ? `The ${kind} holds the plan back.` : `${placeKindsText(kind)} hold the plan back.`
 
-/** Half an hour is the least that anybody would do something for (planning value), ms. */
-const noticed = 30 * 60_000
-
-export const gainOf = ({ beforeAt, afterAt }: BatchFare) => beforeAt === null || afterAt === null ? 0 : beforeAt - afterAt
-
-/** The batch that a change moves furthest forward, or null when none is noticeably sooner. */
-export function mostSooner({ batches }: Difference): BatchFare | null {
-  const best = [...batches].sort((a, b) => gainOf(b) - gainOf(a))[0]
-  return best && gainOf(best) >= noticed ? best : null
-}
-
-/** Whether a change does anything worth saying. */
-export const isWorth = (difference: Difference) => difference.windowsAfter < difference.windowsBefore || difference.latenessBefore - difference.latenessAfter >= 30 || mostSooner(difference) !== null
-
 function daysWaited({ waitedMin }: OneMore, days: readonly string[]): string {
   const most = Math.max(...waitedMin)
   const named = days.flatMap((date, index) => (waitedMin[index] ?? 0) >= Math.max(30, most / 2) ? [weekdayOfDate(date)] : [])
@@ -86,12 +74,14 @@ export function bottleneckSentence(state: BottleneckState, clock: Clock): { head
   const first = state.more.find(each => isWorth(each.difference))
   if (!first) return { head: 'No single shortage holds the plan back.', rest: 'With one more of anything it would end much as it does: drying and hours set the pace.' }
   const { difference } = first
+  const less = lessLate(difference) ?? 0
   const waited = first.waitedMin.reduce((sum, each) => sum + each, 0)
   const wait = waited < 30 ? [] : [`Pieces that are ready wait ${longSpan(waited)} in all for ${first.kind === null ? 'hands' : 'them'}${daysWaited(first, state.days)}.`]
   const batch = mostSooner(difference)
   const buys = [
     ...batch?.beforeAt != null && batch.afterAt !== null ? [`finish ${batch.name} ${clockTime(batch.afterAt, clock)} instead of ${clockTime(batch.beforeAt, clock)}`] : [],
-    ...difference.latenessBefore - difference.latenessAfter >= 30 ? [`take ${longSpan(difference.latenessBefore - difference.latenessAfter)} off the lateness of all batches together`] : [],
+    ...gainedTimes(difference).length === 0 ? [] : [`give ${listText(gainedTimes(difference).map(each => each.name))} a time at all`],
+    ...less >= 30 ? [`take ${longSpan(less)} off the lateness of all batches together`] : [],
     ...difference.windowsAfter < difference.windowsBefore ? [difference.windowsAfter === 0 ? 'let every window be kept' : `let ${difference.windowsBefore - difference.windowsAfter} more windows be kept`] : [],
   ]
   return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${listText(buys)}.`].join(' ') }
@@ -115,15 +105,16 @@ export function fareText(fare: BatchFare): string {
   if (fare.beforeAt === null && fare.afterAt !== null) return 'now finds its time'
   if (fare.beforeAt !== null && fare.afterAt === null) return 'no longer finds its time'
   const gain = gainOf(fare)
-  return Math.abs(gain) < noticed ? whatIfWords.same : `${longSpan(Math.abs(gain) / 60_000)} ${gain > 0 ? 'sooner' : 'later'}`
+  return !isNoticeable(fare) ? whatIfWords.same : `${longSpan(Math.abs(gain) / 60_000)} ${gain > 0 ? 'sooner' : 'later'}`
 }
 
 /** What a change does to the whole, in one or two sentences. */
-export function differenceText({ windowsBefore, windowsAfter, latenessBefore, latenessAfter, batches }: Difference): string {
-  const less = latenessBefore - latenessAfter
-  const lateness = Math.abs(less) < 30 ? latenessAfter === 0 ? 'No batch is late, with it or without.' : 'Lateness stays as it is.' : `All batches together are ${longSpan(Math.abs(less))} ${less > 0 ? 'less' : 'more'} late${latenessAfter === 0 ? ': none is late any more' : ''}.`
+export function differenceText(difference: Difference): string {
+  const { windowsBefore, windowsAfter, latenessAfter, batches } = difference
+  const less = lessLate(difference) ?? 0
+  const lateness = lessLate(difference) === null ? 'What is late cannot be compared: a batch has a time on one side only.' : Math.abs(less) < 30 ? latenessAfter === 0 ? 'No batch is late, with it or without.' : 'Lateness stays as it is.' : `All batches together are ${longSpan(Math.abs(less))} ${less > 0 ? 'less' : 'more'} late${latenessAfter === 0 ? ': none is late any more' : ''}.`
   const windows = windowsAfter === windowsBefore ? [] : [windowsAfter < windowsBefore ? `${windowsBefore - windowsAfter} fewer missed.` : `${windowsAfter - windowsBefore} more missed.`].map(each => `Windows: ${each}`)
-  const moved = batches.filter(each => Math.abs(gainOf(each)) >= noticed).length
+  const moved = batches.filter(each => isNoticeable(each) || (each.beforeAt === null) !== (each.afterAt === null)).length
   return [lateness, ...windows, moved === 0 ? 'No batch ends noticeably otherwise.' : `${moved === 1 ? 'One batch ends' : `${moved} batches end`} otherwise.`].join(' ')
 }
 

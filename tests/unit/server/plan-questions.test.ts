@@ -1,0 +1,116 @@
+import { describe, expect, it } from 'vitest'
+import { openHours, order, place, planEntry, reading, studio as studioTable } from '~~/db/schema'
+import { withOnePlace } from '~~/server/planning/bottleneck'
+import { changedProblem } from '~~/server/planning/changed-facts'
+import { baseOf, copyFrom } from '~~/server/planning/questions'
+import type { Asker } from '~~/server/planning/questions'
+import { atOnce, replan } from '~~/server/planning/replan'
+import { solve } from '~~/server/planner/solve'
+import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
+import { isRefusal } from '~~/server/utils/errors'
+import { studioZone } from '#shared/time'
+import { bottleneckSentence } from '#shared/words/what-if'
+import { plannedStudio } from '../../helpers/planned-studio'
+import { hour, minute } from '../../helpers/studio'
+
+// A Tuesday.
+const now = Date.parse('2026-04-07T10:00:00Z')
+const clock = { now, zone: studioZone('UTC') }
+const ask: Asker = (_studio, problem) => Promise.resolve(solve(problem, { schedules: 120 }))
+
+/** Six boards to be laminated on a bench with room for two at a time, each lying there under weight for a day, due in two days. */
+async function oneBench() {
+  const studio = plannedStudio(now, 'laminated-boards', 6)
+  studio.db.insert(place).values({ studioId: studio.studioId, roomId: studio.rooms.bench, name: 'Bench end', kind: 'bench', capacity: 2 }).run()
+  studio.db.update(order).set({ dueAt: now + 48 * hour }).run()
+  expect(await replan(studio.db, studio.studioId, now, atOnce)).toMatchObject({ ok: true })
+  return studio
+}
+
+describe('the bottleneck', () => {
+  it('is the bench, and what the sentence claims of one more is what solving with one more gives', async () => {
+    const { db, studioId } = await oneBench()
+    const state = await bottleneck(db, studioId, now, ask)
+    if (isRefusal(state)) throw new Error(state.message)
+    expect(state.more[0]?.kind).toBe('bench')
+    const benches = state.waited.find(each => each.for === 'bench')
+    expect(benches?.minutes.reduce((sum, each) => sum + each, 0)).toBeGreaterThan(60)
+    // Solved again here, with one place more and from the same plan.
+    const base = await baseOf(db, studioId, now, ask)
+    if (isRefusal(base)) throw new Error(base.message)
+    const { problem, zeroAt } = base.changed.given
+    const again = solve(copyFrom(withOnePlace(problem, 'bench'), base.from), { schedules: 120 })
+    const ends = again.entries.reduce((end, entry) => Math.max(end, entry.end), 0)
+    const claimed = state.more[0]?.difference
+    expect(claimed?.latenessAfter).toBe(again.objective.lateness)
+    expect(claimed?.batches[0]?.afterAt).toBe(zeroAt + ends * minute)
+    expect(claimed?.latenessBefore).toBeGreaterThan(claimed?.latenessAfter ?? Infinity)
+    const { head, rest } = bottleneckSentence(state, clock)
+    expect(head).toBe('Benches hold the plan back.')
+    expect(rest).toMatch(/^Pieces that are ready wait .* in all for them.*\. One more place on a bench would finish Boxs .* instead of .* and take .* off the lateness of all batches together\.$/)
+  })
+  it('says that no single shortage holds it back where one more of anything changes nothing', async () => {
+    const studio = plannedStudio(now, 'oiled-bowl', 1)
+    await replan(studio.db, studio.studioId, now, atOnce)
+    const state = await bottleneck(studio.db, studio.studioId, now, ask)
+    if (isRefusal(state)) throw new Error(state.message)
+    expect(bottleneckSentence(state, clock).head).toBe('No single shortage holds the plan back.')
+  })
+})
+
+describe('what if', () => {
+  it('keeps nothing of what it tries', async () => {
+    const { db, studioId, rooms } = await oneBench()
+    const all = () => JSON.stringify([db.select().from(studioTable).all(), db.select().from(place).all(), db.select().from(openHours).all(), db.select().from(reading).all(), db.select().from(order).all(), db.select().from(planEntry).all()])
+    db.insert(reading).values({ studioId, roomId: rooms.bench, at: now - hour, toldAt: now, tempC: 18, rh: 0.6, source: 'note' }).run()
+    const before = all()
+    for (const change of [{ kind: 'places', placeKind: 'bench', more: 5 }, { kind: 'humidity', roomId: rooms.bench, rh: 0.4 }, { kind: 'heat', roomId: rooms.bench, tempC: 24 }, { kind: 'open day', weekday: 6, fromMin: 540, toMin: 900 }] as const) {
+      expect(await askWhatIf(db, studioId, change, now, ask), change.kind).toMatchObject({ ok: true })
+      expect(all()).toBe(before)
+    }
+  })
+  it('finds that five more places end it sooner, and that a later date is less late by so much', async () => {
+    const { db, studioId } = await oneBench()
+    const more = await askWhatIf(db, studioId, { kind: 'places', placeKind: 'bench', more: 5 }, now, ask)
+    if (isRefusal(more)) throw new Error(more.message)
+    const [fare] = more.difference.batches
+    expect(fare?.afterAt).toBeLessThan(fare?.beforeAt ?? 0)
+    // A date that lies after every end: nothing is late.
+    const due = await askWhatIf(db, studioId, { kind: 'due', batchId: fare?.batchId ?? 0, dueAt: new Date(now + 80 * 24 * hour).toISOString() }, now, ask)
+    expect(isRefusal(due) ? null : due.difference.latenessAfter).toBe(0)
+  })
+  it('lengthens the waits in a damp room and shortens them in a dry one', async () => {
+    const { db, studioId, rooms } = await oneBench()
+    db.insert(reading).values({ studioId, roomId: rooms.bench, at: now - hour, toldAt: now, tempC: 18, rh: 0.6, source: 'note' }).run()
+    const waits = (rh: number) => {
+      const changed = changedProblem(db, studioId, { kind: 'humidity', roomId: rooms.bench, rh }, now)
+      return isRefusal(changed) ? NaN : changed.given.problem.lags.reduce((sum, lag) => sum + (lag.windows[0]?.[0] ?? 0), 0)
+    }
+    expect(waits(0.85)).toBeGreaterThan(waits(0.6))
+    expect(waits(0.35)).toBeLessThan(waits(0.6))
+  })
+  it('refuses heat and drier air where solvent is wet or planned, and another studio’s room', async () => {
+    const { db, studioId, rooms, batch } = plannedStudio(now, 'painted-waxed-box', 1)
+    batch('Case', 1, 'lacquered-instrument')
+    await replan(db, studioId, now, atOnce)
+    for (const change of [{ kind: 'heat', roomId: rooms.bench, tempC: 25 }, { kind: 'humidity', roomId: rooms.bench, rh: 0.4 }] as const) {
+      expect(await askWhatIf(db, studioId, change, now, ask)).toMatchObject({ ok: false, reason: 'impossible', message: expect.stringMatching(/^(Solvent work is planned|A solvent film is drying|Nobody has noted)/) })
+    }
+    expect(await askWhatIf(db, studioId, { kind: 'heat', roomId: 9999, tempC: 20 }, now, ask)).toMatchObject({ ok: false, reason: 'absent' })
+  })
+})
+
+describe('a plan made anew', () => {
+  it('is never worse than the last one repaired to the new facts', async () => {
+    const studio = await oneBench()
+    studio.batch('Lid', 3)
+    const changed = changedProblem(studio.db, studio.studioId, null, now + 10 * minute)
+    if (isRefusal(changed)) throw new Error(changed.message)
+    // With a plan before it, the first that the search makes is that plan on the facts of now.
+    let repaired: { cost: number, unplaced: readonly string[] } | null = null
+    const plan = solve(changed.given.problem, { schedules: 40, onFirst: (first) => { repaired = first } })
+    const first = repaired as { cost: number, unplaced: readonly string[] } | null
+    expect(plan.unplaced.length).toBeLessThanOrEqual(first?.unplaced.length ?? -1)
+    expect(plan.cost).toBeLessThanOrEqual(first?.cost ?? -1)
+  })
+})
