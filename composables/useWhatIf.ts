@@ -11,14 +11,35 @@ import { toCelsius } from '#shared/units'
 
 interface Rooms { id: number, name: string }
 
+const firstWish = () => ({
+  kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: null as number | null,
+  weekday: 6 as number | null, from: '09:00', to: '15:00', memberId: null as number | null, batchId: null as number | null, day: '', time: '12:00',
+})
+type Wish = ReturnType<typeof firstWish>
+
+function minutesOf(text: string): number {
+  const [hours = NaN, rest = NaN] = text.split(':').map(Number)
+  return hours * 60 + rest
+}
+
+/** The change that was typed; what is missing or wrong in it is for the server to say. */
+function changeOf(wish: Wish, week: WeekState, { zone }: Clock, units: Units): WhatIf {
+  const hours = { weekday: wish.weekday ?? 0, fromMin: minutesOf(wish.from), toMin: minutesOf(wish.to) }
+  switch (wish.kind) {
+    case 'places': return { kind: 'places', placeKind: wish.placeKind ?? week.places[0]?.kind ?? 'shelf', more: wish.more ?? 0 }
+    case 'humidity': return { kind: 'humidity', roomId: wish.roomId ?? 0, rh: (wish.rh ?? 0) / 100 }
+    case 'heat': return { kind: 'heat', roomId: wish.roomId ?? 0, tempC: wish.temp === null ? NaN : toCelsius(wish.temp, units) }
+    case 'open day': return { kind: 'open day', ...hours }
+    case 'hours of': return { kind: 'hours of', memberId: wish.memberId ?? 0, ...hours }
+    case 'due': return { kind: 'due', batchId: wish.batchId ?? 0, dueAt: /^\d{4}-\d{2}-\d{2}$/.test(wish.day) ? new Date(fromLocal(wish.day, minutesOf(wish.time) || 0, zone)).toISOString() : '' }
+  }
+}
+
 /** What is being tried on a copy of the plan: the wish as it is typed, the difference it makes, and keeping it where that means something. */
 export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () => Units) {
   const { busy, message, fields, submit } = useSubmit()
   const { busy: keeping, message: refused, submit: send } = useSubmit()
-  const wish = reactive({
-    kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: null as number | null,
-    weekday: 6 as number | null, from: '09:00', to: '15:00', memberId: null as number | null, batchId: null as number | null, day: '', time: '12:00',
-  })
+  const wish = reactive(firstWish())
   const rooms = shallowRef<Rooms[]>([])
   const answer = shallowRef<WhatIfAnswer | null>(null)
   const asked = shallowRef<WhatIf | null>(null)
@@ -26,25 +47,8 @@ export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () =
   async function open() {
     if (rooms.value.length === 0) rooms.value = await callApi<Rooms[]>('/api/rooms').catch(() => [])
   }
-  const minutes = (text: string) => {
-    const [hours = NaN, rest = NaN] = text.split(':').map(Number)
-    return hours * 60 + rest
-  }
-  const hours = () => ({ weekday: wish.weekday ?? 0, fromMin: minutes(wish.from), toMin: minutes(wish.to) })
-
-  function body(): WhatIf {
-    switch (wish.kind) {
-      case 'places': return { kind: 'places', placeKind: wish.placeKind ?? week().places[0]?.kind ?? 'shelf', more: wish.more ?? 0 }
-      case 'humidity': return { kind: 'humidity', roomId: wish.roomId ?? 0, rh: (wish.rh ?? 0) / 100 }
-      case 'heat': return { kind: 'heat', roomId: wish.roomId ?? 0, tempC: wish.temp === null ? NaN : toCelsius(wish.temp, units()) }
-      case 'open day': return { kind: 'open day', ...hours() }
-      case 'hours of': return { kind: 'hours of', memberId: wish.memberId ?? 0, ...hours() }
-      case 'due': return { kind: 'due', batchId: wish.batchId ?? 0, dueAt: /^\d{4}-\d{2}-\d{2}$/.test(wish.day) ? new Date(fromLocal(wish.day, minutes(wish.time) || 0, clock().zone)).toISOString() : '' }
-    }
-  }
-
   async function ask() {
-    const sent = body()
+    const sent = changeOf(wish, week(), clock(), units())
     answer.value = null
     const found = await submit(() => callApi<Wire<WhatIfAnswer>>('/api/plan/what-if', { method: 'POST', body: sent }))
     if (!found) return

@@ -81,4 +81,3 @@ function endsOf({ given }: Changed, plan: Plan): Map<number, number | null> {
     return [Number(job.id.slice('batch '.length)), own.includes(null) ? null : given.zeroAt + Math.max(...own.flatMap(end => end ?? [])) * minute]
   }))
 }
-
