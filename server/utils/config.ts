@@ -16,7 +16,7 @@ export interface Config {
   storageFolder: string
   /** STILLWET_OUTBOX: folder where mail is kept while no mail server is set. */
   outboxFolder: string
-  /** STILLWET_PUBLIC_URL: the address people use, without a slash at its end; null: taken from each request. */
+  /** STILLWET_PUBLIC_URL: the address people use, without a slash at its end; null: links in messages are told as paths. */
   publicUrl: string | null
   /** STILLWET_SESSION_SECRET: seals the sign-in cookie, at least 32 characters. */
   sessionSecret: string

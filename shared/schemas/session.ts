@@ -19,3 +19,9 @@ export const signInBody = z.object({ email, password: z.string().check(z.minLeng
 export const newPassword = z.string().check(z.minLength(10, fields.passwordShort), z.maxLength(200, fields.passwordLong))
 
 export const switchStudioBody = z.object({ studioId: z.int().check(z.positive()) })
+
+/** POST /api/auth/forgotten */
+export const forgottenBody = z.strictObject({ email })
+
+/** POST /api/auth/reset/[token] */
+export const resetBody = z.strictObject({ password: newPassword })

@@ -30,6 +30,10 @@ export const routes: Record<string, RouteCase> = {
   'auth/sign-in.post.ts': { least: 'anyone', apart: 'none', body: () => ({ email: 'nobody@example.test', password: 'wrong' }) },
   'auth/sign-out.post.ts': { least: 'anyone', apart: 'none' },
   'auth/studio.post.ts': { least: 'signed in', apart: 'named', body: () => ({ studioId: 1 }) },
+  'auth/forgotten.post.ts': { least: 'anyone', apart: 'none', body: () => ({ email: 'nobody@example.test' }) },
+  // A link's secret opens it to whoever holds it: that is what it is for.
+  'auth/reset/[token].get.ts': { least: 'anyone', apart: 'none', at: 'invitationToken' },
+  'auth/reset/[token].post.ts': { least: 'anyone', apart: 'none', at: 'invitationToken', body: () => ({ password: 'short' }) },
   'studios.get.ts': { least: 'anyone', apart: 'view' },
   'studios.post.ts': { least: 'anyone', apart: 'none', body: () => ({}) },
   // An invitation's secret opens it to whoever holds it: that is what it is for.
