@@ -98,7 +98,7 @@ export const routes: Record<string, RouteCase> = {
   'calendar/index.get.ts': { least: 'helper', apart: 'view' },
   'calendar/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ everybody: false }) },
   // Everybody ends their own address and nobody another's.
-  'calendar/index.delete.ts': { least: 'helper', apart: 'view', asLeast: 404 },
+  'calendar/index.delete.ts': { least: 'helper', apart: 'view' },
   // The secret opens it to whoever holds it: that is what it is for.
   'calendar/[token].get.ts': { least: 'anyone', apart: 'none', at: 'calendarToken' },
   'calls/index.get.ts': { least: 'helper', apart: 'view' },
