@@ -1,6 +1,7 @@
 import { filmsOf, standings } from '#shared/board'
 import type { Standing } from '#shared/board'
 import { dryness } from '#shared/dryness'
+import { grouped } from '#shared/grouped'
 import type { StudioState } from '#shared/schemas/piece-state'
 import { briefCautions, briefDeferral } from '#shared/library/brief-cautions'
 import { solventRooms } from '#shared/solvent-rooms'
@@ -58,6 +59,15 @@ function cautionsOf(state: StudioState, pieces: readonly ReadPiece[], clock: Clo
   ]
 }
 
+/** So many shut rooms have a line each; more are named together by who opens them, so that the shelves keep their place. */
+const ownLines = 3
+
+function keepOutsOf({ rooms }: StudioState): SheetLine[] {
+  const shut = rooms.flatMap(({ id, name, keepOut }) => keepOut ? [{ id, name, opensBy: keepOut.opensBy }] : [])
+  const lines = shut.length > ownLines ? [...grouped(shut, each => each.opensBy ?? '').values()] : shut.map(each => [each])
+  return lines.map(line => ({ id: line[0]?.id ?? 0, ...sheetKeepOut(line.map(each => each.name), line[0]?.opensBy ?? null) }))
+}
+
 /**
  * What hands may do, shelf by shelf as they stand before the reader. Every shut room is named, whichever room is read.
  * @param roomId only what stands in this room; null for all of them
@@ -72,6 +82,6 @@ export function handlingSheet(state: StudioState, pieces: readonly ReadPiece[], 
     rooms: state.rooms.map(({ id, name }) => ({ id, name })),
     shelves: [...shelves, { key: 0, name: sheetWords.nowhere, room: '', cells: nowhere }].filter(each => each.cells.length > 0),
     cautions: cautionsOf(state, pieces, clock),
-    keepOuts: state.rooms.flatMap(room => room.keepOut ? [{ id: room.id, ...sheetKeepOut(room.name, room.keepOut.opensBy) }] : []),
+    keepOuts: keepOutsOf(state),
   }
 }

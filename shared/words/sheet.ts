@@ -36,6 +36,6 @@ export function sheetRags(room: string, since: string): { head: string, says: st
 }
 
 /** "Spray room: keep out." and who opens it, in two pieces. No time: none may read as leave to enter. */
-export function sheetKeepOut(room: string, opensBy: string | null): { head: string, says: string } {
-  return { head: `${room}: keep out.`, says: `${opensBy ?? 'A maker'} opens it.` }
+export function sheetKeepOut(rooms: readonly string[], opensBy: string | null): { head: string, says: string } {
+  return { head: `${listText(rooms)}: keep out.`, says: `${opensBy ?? 'A maker'} opens ${rooms.length === 1 ? 'it' : 'them'}.` }
 }

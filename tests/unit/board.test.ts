@@ -117,6 +117,12 @@ describe('the handling sheet', () => {
     expect(handlingSheet(state, readAll(state, noon), clock, 1).keepOuts).toEqual([{ id: 2, head: 'Spray room: keep out.', says: 'Mara opens it.' }])
     expect(handlingSheet(state, readAll(state, noon), clock, 2).shelves).toEqual([])
   })
+  it('names many shut rooms together by who opens them, so that the shelves keep their place', () => {
+    const state = studioWith(ledgers(1))
+    const shut = (id: number, opensBy: string) => ({ ...state.rooms[0]!, id, name: `Room ${id}`, keepOut: { sinceAt: at(9), opensBy } })
+    state.rooms = [shut(1, 'Mara'), shut(2, 'Moss'), shut(3, 'Mara'), shut(4, 'Mara')]
+    expect(handlingSheet(state, readAll(state, noon), clock, null).keepOuts.map(({ head, says }) => `${head} ${says}`)).toEqual(['Room 1, Room 3 and Room 4: keep out. Mara opens them.', 'Room 2: keep out. Moss opens it.'])
+  })
   it('warns of oily rags first, then of the rooms with a wet solvent film in one line, whichever room is read', () => {
     const wet = { ...filmState(), solventBorne: true }
     const state = studioWith([pieceState(1, 'Ledger 1', [groupState(1, 1, [wet])])])
