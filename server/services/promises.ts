@@ -19,7 +19,7 @@ import type { BatchToComeRequest, DateEstimate, PromiseBasis, PromiseRequest, Pr
 import { promiseCauses } from '#shared/terms'
 import type { PromiseCause } from '#shared/terms'
 import { studioZone } from '#shared/time'
-import { noDate, promiseRefusals } from '#shared/words/promise'
+import { fields, noDate, promiseRefusals } from '#shared/words/promise'
 
 const minute = 60_000
 const dayMin = 24 * 60
@@ -83,7 +83,7 @@ export async function promiseForNew(db: Database, studioId: number, memberId: nu
   if (!facts.places.some(place => place.id === request.placeId)) return malformed({ placeId: promiseRefusals.noPlace })
   const startsAt = Math.max(zeroOf(now), Date.parse(request.startsAt))
   const added = factsWithBatch(db, facts, { ...request, startsAt, dueAt: request.dueAt === null ? null : Date.parse(request.dueAt) }, startsAt)
-  if (!added) return malformed({ scheduleId: promiseRefusals.noSchedule })
+  if (!added) return malformed({ scheduleId: fields.schedule })
   const basis = readBasis(db, studioId, now)
   const made = await estimatePlan(db, added, now, luckOf(basis), search, { key: `promise ${studioId} new ${memberId}`, millis: searchMs })
   const found = made && estimateOf(made, added, [batchToCome])

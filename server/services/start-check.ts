@@ -18,7 +18,7 @@ import type { Plan } from '#shared/planning/types'
 import type { BatchToComeRequest, PushedBatch, StartPlan } from '#shared/schemas/promise'
 import { startInstants } from '#shared/start-times'
 import { studioZone } from '#shared/time'
-import { promiseRefusals } from '#shared/words/promise'
+import { fields, promiseRefusals } from '#shared/words/promise'
 
 const minute = 60_000
 /** Each way to start is searched for so long, ms: four of them and what is around them stay under two seconds. */
@@ -41,7 +41,7 @@ export async function checkStart(db: Database, studioId: number, memberId: numbe
   const batches = batchesOf(db, studioId)
   for (const asked of startsToAsk(facts, now)) {
     const added = factsWithBatch(db, facts, { ...given, startsAt: asked.at }, asked.pinned ? asked.at : null)
-    if (!added) return malformed({ scheduleId: promiseRefusals.noSchedule })
+    if (!added) return malformed({ scheduleId: fields.schedule })
     const problem = studioProblem(added, new WaitsToCome(db, added, now), now)
     const solved = await search(`start ${studioId} ${memberId} ${asked.start}`, problem.problem, { millis: searchMs })
     if (!solved.ok) return conflict(promiseRefusals.newer)

@@ -56,7 +56,7 @@ function windowsOf(planned: readonly LagWindow[], draw: LagDraw, wait: (of: Doub
 /** Everything as the plan counts on. */
 export function plainScenario(problem: PlanProblem, recipe: Recipe): Scenario {
   return {
-    windows: problem.lags.map(lag => lag.windows), tails: Float64Array.from(recipe.tails, tail => tail.planned), againWaits: Float64Array.from(recipe.again, each => each.planned),
+    windows: problem.lags.map(lag => lag.windows), least: Float64Array.from(problem.lags, lag => lag.windows[0]![0]), tails: Float64Array.from(recipe.tails, tail => tail.planned), againWaits: Float64Array.from(recipe.again, each => each.planned),
     again: new Uint8Array(recipe.again.length), minutes: Float64Array.from(problem.activities, ({ minutes }) => minutes), againMinutes: Float64Array.from(recipe.again, each => each.minutes),
     open: problem.resources.map(each => each.open), breakable: false,
   }
@@ -67,11 +67,12 @@ export function drawnScenario(problem: PlanProblem, recipe: Recipe, luck: Draws)
   const waitFor = (film: number) => (of: DoubtfulWait) => waitOf(of, luck.materials[recipe.films[film] ?? 0] ?? 0, luck.films[film] ?? 0)
   const paced = (minutes: number, i: number) => (minutes === 0 ? 0 : Math.max(1, Math.round(minutes * Math.exp(minuteSd.week * luck.week + minuteSd.single * (luck.minutes[i] ?? 0)))))
   const size = problem.activities.length
+  const windows = problem.lags.map((lag, i) => {
+    const draw = recipe.lags[i]
+    return draw ? windowsOf(lag.windows, draw, waitFor(draw.film)) : lag.windows
+  })
   return {
-    windows: problem.lags.map((lag, i) => {
-      const draw = recipe.lags[i]
-      return draw ? windowsOf(lag.windows, draw, waitFor(draw.film)) : lag.windows
-    }),
+    windows, least: Float64Array.from(windows, each => each[0]![0]),
     tails: Float64Array.from(recipe.tails, tail => Math.max(tail.planned, waitFor(tail.film)(tail.wait))),
     againWaits: Float64Array.from(recipe.again, ({ planned, film, wait }) => (wait ? Math.max(planned, waitFor(film)(wait)) : planned)),
     again: Uint8Array.from(recipe.again, (_, i) => Number((luck.again[i] ?? 1) < recipe.luck.rework)),
@@ -87,7 +88,7 @@ export function mixed(drawn: Scenario, plain: Scenario, causes: Causes): Scenari
   const drying = causes.drying ? drawn : plain
   const minutes = causes.minutes ? drawn : plain
   return {
-    windows: drying.windows, tails: drying.tails, againWaits: drying.againWaits, again: causes.rework ? drawn.again : plain.again,
+    windows: drying.windows, least: drying.least, tails: drying.tails, againWaits: drying.againWaits, again: causes.rework ? drawn.again : plain.again,
     minutes: minutes.minutes, againMinutes: minutes.againMinutes, open: causes.hours ? drawn.open : plain.open, breakable: causes.hours || causes.minutes,
   }
 }

@@ -18,8 +18,8 @@ export interface Operation {
   simple: boolean
   /** Some window of it, missed, costs minutes. */
   recovers: boolean
-  /** What it waits for: `lag` by its place in the problem; null: plainly after the other. `from` null: minute 0. */
-  after: { from: number | null, lag: number | null }[]
+  /** What it waits for: `lag` by its place in the problem, -1: plainly after the other. `from` -1: minute 0. `plain`: one window that never shuts. */
+  after: { from: number, lag: number, plain: boolean }[]
 }
 
 /** What a plan decided, one thing after another: first the problem's activities in its order, then set-ups and clean-ups, then the coats that may be done again. */
@@ -28,7 +28,7 @@ export function operationsOf(problem: PlanProblem, plan: Plan, recipe: Recipe): 
   sessions(problem, plan, found)
   for (const [i, { activity }] of recipe.again.entries()) {
     const coat = found[activity]!
-    found.push({ ...coat, plannedAt: coat.plannedAt + coat.minutes, notBefore: 0, fixedAt: null, activity: null, again: i, simple: true, recovers: false, after: [{ from: activity, lag: null }] })
+    found.push({ ...coat, plannedAt: coat.plannedAt + coat.minutes, notBefore: 0, fixedAt: null, activity: null, again: i, simple: true, recovers: false, after: [{ from: activity, lag: -1, plain: true }] })
   }
   return found
 }
@@ -50,7 +50,7 @@ function activities(problem: PlanProblem, plan: Plan): Operation[] {
   for (const [lag, { from, to, windows, recovery }] of problem.lags.entries()) {
     if (from !== null && !entries.has(from)) continue
     const operation = found[byId.get(to)!]!
-    operation.after.push({ from: from === null ? null : byId.get(from)!, lag })
+    operation.after.push({ from: from === null ? -1 : byId.get(from)!, lag, plain: windows.length === 1 && windows[0]![1] === null })
     operation.simple &&= windows.length === 1
     operation.recovers ||= recovery !== null && recovery.minutes > 0 && windows[windows.length - 1]![1] !== null
   }
@@ -68,10 +68,10 @@ function sessions(problem: PlanProblem, plan: Plan, found: Operation[]) {
     const { needs, mayRunOver } = found[first]!
     const plain = { release: 0, fixedAt: null, activity: null, again: null, splittable: false, simple: true, recovers: false, needs }
     if (family.setup > 0) {
-      found[first]!.after.push({ from: found.length, lag: null })
+      found[first]!.after.push({ from: found.length, lag: -1, plain: true })
       found.push({ ...plain, plannedAt: session.start, notBefore: session.start, minutes: family.setup, mayRunOver: false, after: [] })
     }
     const at = session.end - family.cleanup
-    if (family.cleanup > 0) found.push({ ...plain, plannedAt: at, notBefore: at, minutes: family.cleanup, mayRunOver, after: [{ from: last, lag: null }] })
+    if (family.cleanup > 0) found.push({ ...plain, plannedAt: at, notBefore: at, minutes: family.cleanup, mayRunOver, after: [{ from: last, lag: -1, plain: true }] })
   }
 }

@@ -35,9 +35,17 @@ export class Replay {
   private readonly size: number
   private readonly jobs: readonly (readonly number[] | null)[]
   private readonly capacities: readonly number[]
+  /** In the order of the plan: each comes after all it waits for. */
+  private readonly order: readonly number[]
+  /** The first of the operations that are done only where a coat is done again. */
+  private readonly firstAgain: number
   private readonly keys: Float64Array
   private readonly ends: Float64Array
   private readonly starts: Float64Array
+  /** Of the run under way: minutes by operation; the operation whose end counts for each, its own or that of the coat done again. */
+  private readonly minutes: Float64Array
+  private readonly last: Int32Array
+  private readonly places: Float64Array
 
   constructor(private readonly problem: PlanProblem, plan: Plan, private readonly recipe: Recipe) {
     this.size = problem.activities.length
@@ -46,24 +54,21 @@ export class Replay {
     const isPlaced = (id: string) => this.operations[byId.get(id)!]!.plannedAt < Infinity
     this.jobs = problem.jobs.map(job => (job.activities.every(isPlaced) ? job.activities.map(id => byId.get(id)!) : null))
     this.capacities = problem.resources.map(each => each.capacity)
-    this.keys = new Float64Array(this.operations.length)
-    this.starts = new Float64Array(this.operations.length)
-    this.ends = new Float64Array(this.operations.length)
+    const count = this.operations.length
+    this.firstAgain = count - recipe.again.length
+    this.keys = new Float64Array(count)
+    this.starts = new Float64Array(count)
+    this.ends = new Float64Array(count)
+    this.minutes = Float64Array.from(this.operations, each => each.minutes)
+    this.last = new Int32Array(count)
     this.order = this.operations.map((_, i) => i).filter(i => this.operations[i]!.plannedAt < Infinity)
       .sort((a, b) => this.operations[a]!.plannedAt - this.operations[b]!.plannedAt || this.rank(b) - this.rank(a) || a - b)
+    this.places = new Float64Array(this.order.length)
   }
-
-  /** In the order of the plan: each comes after all it waits for. */
-  private readonly order: number[]
 
   /** Of equal starts what is done again goes before what waits for it, and a set-up before its members. */
   private rank(operation: number): number {
     return this.operations[operation]!.activity === null ? 1 : 0
-  }
-
-  private minutesOf({ activity, again, minutes }: Operation, scenario: Scenario): number {
-    if (again !== null) return scenario.againMinutes[again]!
-    return activity !== null ? scenario.minutes[activity]! : minutes
   }
 
   /**
@@ -71,21 +76,29 @@ export class Replay {
    * @param waits false: nothing waits for hands that are busy, nor for the plan's own turn
    */
   run(scenario: Scenario, waits = true): Float64Array {
-    const again = this.againOf(scenario)
-    this.propagate(scenario, waits, again)
+    this.prepare(scenario)
+    this.propagate(scenario, waits)
     const free = this.capacities.map(capacity => new Float64Array(capacity))
-    for (const i of this.inOrder(scenario)) this.place(i, scenario, waits, again, free)
-    return this.jobEnds(scenario, again)
+    const { order } = this
+    const sorted = this.inOrder(scenario)
+    for (let i = 0; i < sorted.length; i++) this.place(order[((sorted[i]! % order.length) + order.length) % order.length]!, scenario, waits, free)
+    return this.jobEnds(scenario)
+  }
+
+  private prepare(scenario: Scenario) {
+    const { firstAgain, minutes, last } = this
+    minutes.set(scenario.minutes)
+    minutes.set(scenario.againMinutes, firstAgain)
+    for (let i = 0; i < last.length; i++) last[i] = i
+    for (let k = 0; k < scenario.again.length; k++) if (scenario.again[k] === 1) last[this.recipe.again[k]!.activity] = firstAgain + k
   }
 
   /** What is done, by its key and then as in the plan: both in one number, so that the sort needs no comparing. */
-  private inOrder(scenario: Scenario): Int32Array {
-    const { order, keys } = this
-    const places = new Float64Array(order.length)
+  private inOrder(scenario: Scenario): Float64Array {
+    const { order, keys, places } = this
     let count = 0
     for (let place = 0; place < order.length; place++) if (this.isOn(order[place]!, scenario)) places[count++] = Math.round(keys[order[place]!]!) * order.length + place
-    const sorted = places.subarray(0, count).sort()
-    return Int32Array.from(sorted, each => order[((each % order.length) + order.length) % order.length]!)
+    return places.subarray(0, count).sort()
   }
 
   /** Starts of the problem's activities in the last run. */
@@ -94,71 +107,68 @@ export class Replay {
   }
 
   private isOn(i: number, scenario: Scenario): boolean {
-    const { again } = this.operations[i]!
-    return again === null || scenario.again[again] === 1
-  }
-
-  /** Where an activity was done again, the operation whose end counts instead of its own; else itself. */
-  private againOf(scenario: Scenario): Int32Array {
-    const last = Int32Array.from({ length: this.operations.length }, (_, i) => i)
-    const first = this.operations.length - this.recipe.again.length
-    for (let k = 0; k < this.recipe.again.length; k++) if (scenario.again[k] === 1) last[this.recipe.again[k]!.activity] = first + k
-    return last
+    return i < this.firstAgain || scenario.again[i - this.firstAgain] === 1
   }
 
   /** When each could be begun were hands always free: the order in which a studio comes to its work. */
-  private propagate(scenario: Scenario, waits: boolean, again: Int32Array) {
-    const reached = this.ends
-    for (const i of this.order) {
+  private propagate(scenario: Scenario, waits: boolean) {
+    const { order, operations, keys, ends, minutes } = this
+    for (let n = 0; n < order.length; n++) {
+      const i = order[n]!
       if (!this.isOn(i, scenario)) continue
-      const operation = this.operations[i]!
+      const operation = operations[i]!
       let at = waits ? Math.max(operation.notBefore, operation.release) : operation.release
-      for (const { from, lag } of operation.after) {
-        const origin = this.originOf(operation, from, again, reached)
-        const least = lag === null ? (operation.again === null ? 0 : scenario.againWaits[operation.again]!) : scenario.windows[lag]![0]![0]
-        at = Math.max(at, origin + least)
+      for (let k = 0; k < operation.after.length; k++) {
+        const { from, lag } = operation.after[k]!
+        const moment = this.originOf(operation, from) + (lag < 0 ? this.afterCoat(operation, scenario) : scenario.least[lag]!)
+        if (moment > at) at = moment
       }
-      this.keys[i] = operation.fixedAt ?? at
-      reached[i] = this.keys[i]! + this.minutesOf(operation, scenario)
+      if (operation.fixedAt !== null) at = operation.fixedAt
+      keys[i] = at
+      ends[i] = at + minutes[i]!
     }
   }
 
-  private originOf(operation: Operation, from: number | null, again: Int32Array, ends: Float64Array): number {
-    if (from === null) return 0
+  private originOf(operation: Operation, from: number): number {
+    if (from < 0) return 0
     // What is done again waits for the coat itself.
-    return ends[operation.again === null ? again[from]! : from]!
+    return this.ends[operation.again === null ? this.last[from]! : from]!
   }
 
+  /** What is done again waits till the coat has dried; a member follows its set-up at once. */
+  private afterCoat = ({ again }: Operation, scenario: Scenario) => (again === null ? 0 : scenario.againWaits[again]!)
+
   /** Earliest start inside the windows of every lag; past a missed one. */
-  private ready(operation: Operation, from: number, scenario: Scenario, again: Int32Array): number {
+  private ready(operation: Operation, from: number, scenario: Scenario): number {
     let at = Math.max(from, operation.release)
     for (let before = NaN; before !== at;) {
       before = at
-      for (const each of operation.after) {
-        const origin = this.originOf(operation, each.from, again, this.ends)
-        if (each.lag === null) at = Math.max(at, origin + (operation.again === null ? 0 : scenario.againWaits[operation.again]!))
-        else at = intoWindow(scenario.windows[each.lag]!, origin, at)
+      for (let k = 0; k < operation.after.length; k++) {
+        const { from: other, lag, plain } = operation.after[k]!
+        const origin = this.originOf(operation, other)
+        if (plain) at = Math.max(at, origin + (lag < 0 ? this.afterCoat(operation, scenario) : scenario.least[lag]!))
+        else at = intoWindow(scenario.windows[lag]!, origin, at)
       }
       if (operation.simple) return at
     }
     return at
   }
 
-  private recovery(operation: Operation, at: number, scenario: Scenario, again: Int32Array): number {
+  private recovery(operation: Operation, at: number, scenario: Scenario): number {
     let minutes = 0
     for (const each of operation.after) {
-      if (each.lag === null) continue
+      if (each.lag < 0) continue
       const { recovery } = this.problem.lags[each.lag]!
-      if (recovery && missed(scenario.windows[each.lag]!, at - this.originOf(operation, each.from, again, this.ends))) minutes += recovery.minutes
+      if (recovery && missed(scenario.windows[each.lag]!, at - this.originOf(operation, each.from))) minutes += recovery.minutes
     }
     return minutes
   }
 
-  private place(i: number, scenario: Scenario, waits: boolean, again: Int32Array, free: Float64Array[]) {
+  private place(i: number, scenario: Scenario, waits: boolean, free: Float64Array[]) {
     const operation = this.operations[i]!
-    const minutes = this.minutesOf(operation, scenario)
+    const minutes = this.minutes[i]!
     if (operation.fixedAt !== null) {
-      const start = operation.fixedAt > 0 ? this.ready(operation, operation.fixedAt, scenario, again) : operation.fixedAt
+      const start = operation.fixedAt > 0 ? this.ready(operation, operation.fixedAt, scenario) : operation.fixedAt
       return this.keep(i, start, start + minutes, free)
     }
     let at = waits ? Math.max(0, operation.notBefore) : 0
@@ -167,9 +177,9 @@ export class Replay {
     const atOnce = splittable || operation.mayRunOver
     let length = minutes
     for (let before = NaN; before !== at;) {
-      if (Number.isNaN(before) || !operation.simple) at = this.ready(operation, at, scenario, again)
+      if (Number.isNaN(before) || !operation.simple) at = this.ready(operation, at, scenario)
       before = at
-      if (operation.recovers) length = minutes + this.recovery(operation, at, scenario, again)
+      if (operation.recovers) length = minutes + this.recovery(operation, at, scenario)
       at = this.opens(operation, at, atOnce ? Math.min(1, length) : length, scenario)
     }
     this.keep(i, at, splittable ? this.paused(operation, at, length, scenario) : at + length, free)
@@ -215,10 +225,10 @@ export class Replay {
     }
   }
 
-  private jobEnds(scenario: Scenario, again: Int32Array): Float64Array {
-    const ends = Float64Array.from(this.jobs, own => (own === null ? NaN : own.reduce((end, i) => Math.max(end, this.ends[again[i]!]!), 0)))
+  private jobEnds(scenario: Scenario): Float64Array {
+    const ends = Float64Array.from(this.jobs, own => (own === null ? NaN : own.reduce((end, i) => Math.max(end, this.ends[this.last[i]!]!), 0)))
     for (const [k, { job, from }] of this.recipe.tails.entries()) {
-      const origin = from === null ? 0 : this.ends[again[from]!]!
+      const origin = from === null ? 0 : this.ends[this.last[from]!]!
       if (ends[job]! >= 0) ends[job] = Math.max(ends[job]!, origin + scenario.tails[k]!)
     }
     return ends

@@ -7,6 +7,8 @@ import type { PromiseCause } from '#shared/terms'
 
 /** Scenarios that a promise is made from. */
 export const usualScenarios = 200
+/** In so many of them each cause is switched off in turn: enough to tell half a day. */
+const usualQuestioned = 100
 /** Of the scenarios, the share that are done by the date to promise. */
 export const cautiousShare = 0.9
 
@@ -18,7 +20,7 @@ export interface SimulateOptions { seed?: number, scenarios?: number, causes?: r
 const every: Causes = { drying: true, rework: true, minutes: true, hours: true, waiting: true }
 
 /**
- * Goes through a plan's decisions in many drawn scenarios, and again with each cause switched off in turn on the same draws. Yields after every
+ * Goes through a plan's decisions in many drawn scenarios, and in half of them again with each cause switched off in turn on the same draws. Yields after every
  * scenario, so that the caller may do something else meanwhile. The same seed gives the same outcome. Ends are by job, one array for each scenario.
  */
 export function* simulate(problem: PlanProblem, plan: Plan, recipe: Recipe, { seed = 1, scenarios = usualScenarios, causes = promiseCauses }: SimulateOptions = {}): Generator<number, Outcome> {
@@ -28,7 +30,7 @@ export function* simulate(problem: PlanProblem, plan: Plan, recipe: Recipe, { se
   for (let number = 0; number < scenarios; number++) {
     const drawn = drawnScenario(problem, recipe, drawLuck(problem, recipe, seed, number))
     outcome.all.push(replay.run(drawn))
-    for (const cause of causes) outcome.without[cause].push(replay.run(mixed(drawn, plain, { ...every, [cause]: false }), cause !== 'waiting'))
+    if (number < usualQuestioned) for (const cause of causes) outcome.without[cause].push(replay.run(mixed(drawn, plain, { ...every, [cause]: false }), cause !== 'waiting'))
     yield number
   }
   return outcome
@@ -65,7 +67,8 @@ export function estimateFor(outcome: Outcome, jobs: readonly number[]): Estimate
   const cautious = kept(ends, cautiousShare)
   const causes = Object.fromEntries(promiseCauses.map((cause) => {
     const without = outcome.without[cause].map(last)
-    return [cause, without.length === 0 ? 0 : Math.max(0, cautious - kept(without, cautiousShare))]
+    // The same draws with and without.
+    return [cause, without.length === 0 ? 0 : Math.max(0, kept(ends.slice(0, without.length), cautiousShare) - kept(without, cautiousShare))]
   })) as Record<PromiseCause, number>
   return { planned, likely: kept(ends, 0.5), cautious, ends, causes }
 }

@@ -46,9 +46,10 @@ export interface Recipe {
 
 export type Causes = Readonly<Record<PromiseCause, boolean>>
 
-/** One way the work may go. Lag windows by lag; minutes by activity; whether a coat is done again by its place; hours by resource. `breakable`: long work is gone on with after an interruption. */
+/** One way the work may go. Lag windows by lag, and when the first of them opens; minutes by activity; whether a coat is done again by its place; hours by resource. `breakable`: long work is gone on with after an interruption. */
 export interface Scenario {
   windows: readonly (readonly LagWindow[])[]
+  least: Float64Array
   tails: Float64Array
   againWaits: Float64Array
   again: Uint8Array

@@ -1,13 +1,14 @@
 import * as z from 'zod/mini'
 import { instant } from '#shared/schemas/act'
 import type { PromiseCause } from '#shared/terms'
+import { fields as batchFields } from '#shared/words/batch'
 import { fields } from '#shared/words/promise'
 
 /** A batch that has not been started, as far as a date or a start is asked of it. */
 export const batchToCome = z.object({
   scheduleId: z.int(fields.schedule).check(z.positive(fields.schedule)),
-  pieces: z.int(fields.pieces).check(z.gte(1, fields.pieces), z.lte(60, fields.pieces)),
-  sizeUnits: z._default(z.int(fields.size).check(z.gte(1, fields.size), z.lte(20, fields.size)), 1),
+  pieces: z.int(batchFields.pieces).check(z.gte(1, batchFields.pieces), z.lte(60, batchFields.pieces)),
+  sizeUnits: z._default(z.int(batchFields.size).check(z.gte(1, batchFields.size), z.lte(20, batchFields.size)), 1),
   placeId: z.int(fields.place).check(z.positive(fields.place)),
   startsAt: instant,
   dueAt: z._default(z.nullable(instant), null),
@@ -17,7 +18,7 @@ export type BatchToComeRequest = z.infer<typeof batchToCome>
 /** A date given to somebody. The order's name is wanted where the batch belongs to none yet. */
 export const promiseRequest = z.object({
   dateAt: instant,
-  orderName: z.optional(z.string().check(z.trim(), z.minLength(1, fields.orderName), z.maxLength(60, fields.orderName))),
+  orderName: z.optional(z.string().check(z.trim(), z.minLength(1, batchFields.orderName), z.maxLength(60, batchFields.orderName))),
 })
 export type PromiseRequest = z.infer<typeof promiseRequest>
 

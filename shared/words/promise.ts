@@ -9,10 +9,7 @@ const greenwich = studioZone('UTC')
 /** What a field of a promise wants, said when it did not get it. */
 export const fields = {
   schedule: 'Choose one of the studio’s finishing schedules: a date rests on its steps.',
-  pieces: 'A batch has 1 to 60 pieces.',
-  size: 'A piece takes 1 to 20 size units of a shelf.',
   place: 'Choose the place where the pieces stand at first.',
-  orderName: 'Give the order a name of 1 to 60 characters.',
   rework: 'Of ten coats 0 to 9 are done again.',
   share: 'The share of the open hours is 10 to 100 per cent.',
 } as const
@@ -21,7 +18,6 @@ export const promiseRefusals = {
   past: 'That day is over. Promise a day that is still to come.',
   far: 'Promise a day within the next year.',
   noOrder: 'This batch belongs to no order. Give the order a name: a promise is made to somebody.',
-  noSchedule: 'Choose one of the studio’s finishing schedules: a date rests on its steps.',
   noPlace: 'Choose a place of this studio.',
   noEstimate: 'No date can be told, so none is kept. What stands in its way is on the week’s page.',
   newer: 'Something newer was asked meanwhile. Ask again.',
