@@ -161,12 +161,12 @@ function pushedBy(plan: Plan, given: StudioProblem, facts: PlanFacts, batchOf: R
 }
 
 /**
- * The best is the start with the fewest windows missed, then the fewest dates broken, then the earliest end: where one of the set hours is as
+ * The best is a start at an hour of work, with the fewest windows missed, then the fewest dates broken, then the earliest end: where one of the set hours is as
  * good as the plan's own choice, that hour is it.
  */
 function bestFirst(plans: readonly StartPlan[]): StartPlan[] {
   const free = plans.find(plan => plan.start === 'best')
-  const rank = (plan: StartPlan) => [plan.without, plan.missed.length, plan.pushes.filter(push => push.past !== null).length, plan.endsAt ?? Infinity] as const
+  const rank = (plan: StartPlan) => [Number(plan.closed), plan.without, plan.missed.length, plan.pushes.filter(push => push.past !== null).length, plan.endsAt ?? Infinity] as const
   const better = (a: StartPlan, b: StartPlan) => {
     const [x, y] = [rank(a), rank(b)]
     const at = x.findIndex((value, i) => value !== y[i])

@@ -48,6 +48,7 @@ export const promiseWords = {
   sofar: 'Ready by then',
   causes: 'What the days go on',
   basis: 'What this rests on',
+  basisAsk: 'What this rests on: say how often a coat is done again',
   rework: 'Of ten coats, how many are done again?',
   reworkHint: 'A run, nibs, bleed. Said once; the record joins in as it grows.',
   share: 'Open hours that reach the bench, per cent',
