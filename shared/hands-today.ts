@@ -28,5 +28,7 @@ export function stillToday(job: Job, hours: readonly { opensAt: number, closesAt
   })
   const allAt = found.all === null || found.all < 0 ? null : now + found.all * minute
   const few = found.firstFew === null ? null : { count: found.firstFew.count, at: now + found.firstFew.minute * minute }
+  // Whether a coat that was due is on already is the question then, not whether there is time.
+  if (job.due && allAt === null && few === null) return null
   return { pieces: job.pieces.length, allAt, few, shutsAt: last.closesAt, soon: (allAt ?? few?.at ?? now) - now <= soonMs }
 }
