@@ -1,0 +1,102 @@
+import type { Browser } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
+import { startServer } from '../helpers/server'
+import type { TestServer } from '../helpers/server'
+import { firstStudio, joinAs } from '../helpers/sign-in'
+import type { Visitor } from '../helpers/sign-in'
+import type { PlanState } from '#shared/schemas/plan'
+import { fromWire } from '#shared/schemas/wire'
+import type { Wire } from '#shared/schemas/wire'
+
+let server: TestServer
+let browser: Browser
+let owner: Visitor
+let helper: Visitor
+
+const planOf = async () => fromWire<PlanState>((await owner.get<Wire<PlanState>>('/api/plan')).body)
+const blocksOf = async () => (await planOf()).people.flatMap(person => person.blocks)
+const firstWaiting = async () => (await blocksOf()).filter(block => !block.doing).sort((a, b) => a.fromAt - b.fromAt)[0]
+
+beforeAll(async () => {
+  server = await startServer()
+  browser = await openBrowser()
+  owner = await firstStudio(server.origin)
+  helper = await joinAs(server.origin, owner, 'helper', 'hazel@example.test')
+  const room = (await owner.post<{ id: number }>('/api/rooms', { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })).body
+  const place = (await owner.post<{ id: number }>('/api/places', { roomId: room.id, name: 'Shelf A', kind: 'shelf', capacity: 20, sort: 0 })).body
+  // Open round the clock, so that it is the same whenever the test runs.
+  await owner.put('/api/hours', { memberId: null, hours: [1, 2, 3, 4, 5, 6, 7].map(weekday => ({ weekday, fromMin: 0, toMin: 1440 })) })
+  const { body: schedules } = await owner.get<{ id: number, name: string }[]>('/api/schedules')
+  const bowl = schedules.find(each => /bowl/i.test(each.name))
+  const started = await owner.post('/api/batches', { clientKey: 'week-of-test', name: 'Bowls', scheduleId: bowl?.id, pieces: ['Bowl 1', 'Bowl 2'], placeId: place.id, order: { name: 'Fair', dueAt: new Date(Date.now() + 86_400_000).toISOString() }, startsAt: new Date().toISOString() })
+  expect(started.status, JSON.stringify(started.body)).toBe(200)
+  await expect.poll(async () => (await blocksOf()).length, { timeout: 30_000, interval: 500 }).toBeGreaterThan(0)
+}, 180_000)
+afterAll(async () => {
+  await browser.close()
+  await server.stop()
+})
+
+describe('the plan on Week', () => {
+  it('is pinned by keyboard, let go again, and pinned by a drag', async () => {
+    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
+    await visit(page, '/week')
+    const peg = page.getByRole('button', { name: /Bowls 1 and 2/ }).first()
+    await peg.focus()
+    await page.keyboard.press('Enter')
+    await page.getByRole('dialog').getByRole('button', { name: '15 min later' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    const was = await firstWaiting()
+    await page.getByRole('dialog').getByRole('button', { name: '15 min later' }).focus()
+    await page.keyboard.press('Enter')
+    await page.getByText(/is pinned at .* The rest of the plan follows\./).waitFor()
+    await expect.poll(async () => (await blocksOf()).find(block => block.pinId !== null)?.workAt, { timeout: 20_000 }).toBe((was?.workAt ?? 0) + 15 * 60_000)
+
+    // A time that has gone by is refused with its sentence, and the pin stays as it is.
+    const refused = await owner.post<{ data: { message: string } }>('/api/pins', { turnIds: was?.turnIds, startsAt: new Date(Date.now() - 3_600_000).toISOString(), memberId: null })
+    expect([refused.status, refused.body.data.message]).toEqual([422, expect.stringMatching(/^That time has gone by\./)])
+    expect((await helper.post('/api/pins', { turnIds: was?.turnIds, startsAt: new Date(Date.now() + 3_600_000).toISOString(), memberId: null })).status).toBe(403)
+
+    const pinned = page.getByRole('button', { name: /pinned.*Bowls 1 and 2/ }).first()
+    await pinned.press('Enter')
+    await page.getByRole('dialog').getByRole('button', { name: 'Unpin' }).press('Enter')
+    await page.getByText(/is no longer pinned/).waitFor()
+    await expect.poll(async () => (await blocksOf()).every(block => block.pinId === null), { timeout: 20_000 }).toBe(true)
+
+    const box = await page.getByRole('button', { name: /Bowls 1 and 2/ }).first().boundingBox()
+    if (!box) throw new Error('The peg is not on the page.')
+    await page.mouse.move(box.x + 20, box.y + 20)
+    await page.mouse.down()
+    await page.mouse.move(box.x + 80, box.y + 20, { steps: 5 })
+    await page.mouse.move(box.x + 140, box.y + 20, { steps: 5 })
+    await page.mouse.up()
+    await expect.poll(async () => (await blocksOf()).some(block => block.pinId !== null), { timeout: 20_000 }).toBe(true)
+    expect(problems).toEqual([])
+  })
+
+  it('shows the difference a change makes, and keeps nothing of it', async () => {
+    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 834, height: 1112 } }, owner)
+    await visit(page, '/week')
+    const before = await owner.get('/api/hours')
+    await page.getByLabel('What to try').selectOption('places')
+    await page.getByLabel('Of which kind').selectOption('shelf')
+    await page.getByRole('button', { name: 'Try it' }).click()
+    await page.getByRole('columnheader', { name: 'With it' }).waitFor()
+    await page.getByText(/No batch|All batches|Lateness stays/).first().waitFor()
+    expect((await owner.get('/api/hours')).body).toEqual(before.body)
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByText(/holds? the plan back\./).first().waitFor({ timeout: 20_000 })
+    expect(problems).toEqual([])
+  })
+
+  it('is a list on a phone', async () => {
+    const { page, problems } = await openPage(browser, server.origin, {}, helper)
+    await visit(page, '/week')
+    await page.getByRole('button', { name: /Bowls 1 and 2/ }).first().click()
+    await page.getByText('Owners and makers pin the plan.').waitFor()
+    expect(await page.evaluate('document.documentElement.scrollWidth')).toBe(390)
+    expect(await axeProblems(page)).toEqual([])
+    expect(problems).toEqual([])
+  })
+})
