@@ -1,5 +1,7 @@
+import Sqlite from 'better-sqlite3'
 import type { Browser } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { newToken } from '~~/server/utils/token'
 import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
 import { startServer } from '../helpers/server'
 import type { TestServer } from '../helpers/server'
@@ -60,6 +62,33 @@ describe('the doors', () => {
     await page.getByRole('button', { name: 'Sign in' }).click()
     await page.waitForURL(url => /^\/(hands|board)$/.test(url.pathname))
     expect(new URL(page.url()).origin).toBe(server.origin)
+  })
+
+  it('say what to do about a forgotten password, here where no mail goes out', async () => {
+    const { page } = await openPage(browser, server.origin)
+    await visit(page, '/sign-in')
+    await page.getByRole('link', { name: 'Forgotten your password?' }).click()
+    await page.getByLabel('E-mail address').fill('wren')
+    await page.getByRole('button', { name: 'Send the link' }).click()
+    await page.getByText('Give an e-mail address, such as name@example.org.').waitFor()
+    await page.getByLabel('E-mail address').fill('wren@example.test')
+    await page.getByRole('button', { name: 'Send the link' }).click()
+    await page.getByText(/npm run password-link/).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    const { token, hash } = newToken()
+    const file = new Sqlite(server.databaseFile)
+    file.prepare('insert into password_reset (token_hash, person_id, expires_at) select ?, id, ? from person').run(hash, Date.now() + 60_000)
+    file.close()
+    await visit(page, `/reset/${token}`)
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByLabel('Choose a password').fill('short')
+    await page.getByRole('button', { name: 'Keep this password' }).click()
+    await page.getByText(/at least 10/i).last().waitFor()
+    await page.getByLabel('Choose a password').fill(testPassword)
+    await page.getByRole('button', { name: 'Keep this password' }).click()
+    await page.waitForURL(url => /^\/(hands|board)$/.test(url.pathname))
+    await visit(page, `/reset/${token}`)
+    await page.getByText('This link has been used or has run out. Ask for a new one.').waitFor()
   })
 
   it('load nothing from outside and no script or style the policy forbids', async () => {
