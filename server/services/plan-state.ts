@@ -123,16 +123,16 @@ function stripsOf(facts: PlanFacts, now: number): Hold[] {
   })
 }
 
-const quarter = 15 * minute
-const about = (at: number | null) => at === null ? null : Math.round(at / quarter)
+const coarse = 3 * 60 * minute
+const about = (at: number | null) => at === null ? null : Math.round(at / coarse)
 
-/** Pieces of one batch that come and go within a quarter of an hour of each other are one strip. */
+/** Pieces of one batch that come and go within three hours of each other are one strip, as long as all of them lie: the earliest coming, the latest drying and going. */
 function alike(holds: readonly Hold[]): PlanStrip[] {
-  return [...grouped(holds, hold => JSON.stringify([hold.batchId, about(hold.fromAt), about(hold.toAt), about(hold.dryAt)])).values()].map((own): PlanStrip => {
+  return [...grouped(holds, hold => JSON.stringify([hold.batchId, about(hold.fromAt), about(hold.toAt)])).values()].map((own): PlanStrip => {
     const [first] = own as [Hold]
     return {
       key: `${first.pieceId} ${first.fromAt}`, pieces: own.map(each => each.name), units: own.reduce((sum, each) => sum + each.units, 0), fromAt: Math.min(...own.map(each => each.fromAt)),
-      toAt: first.toAt, dryAt: first.dryAt, lies: first.lies,
+      toAt: own.some(each => each.toAt === null) ? null : Math.max(...own.map(each => each.toAt ?? 0)), dryAt: own.some(each => each.dryAt !== null) ? Math.max(...own.map(each => each.dryAt ?? 0)) : null, lies: own.every(each => each.lies),
     }
   }).sort((a, b) => a.fromAt - b.fromAt)
 }
