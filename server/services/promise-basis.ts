@@ -7,8 +7,8 @@ import type { Luck } from '#shared/promise/types'
 import type { PromiseBasis, PromiseBasisRequest } from '#shared/schemas/promise'
 
 /** Taken while nobody has said (planning values): of ten coats one is done again, and of ten open hours six reach the bench. */
-export const usualRework = 1
-export const usualShare = 0.6
+const usualRework = 1
+const usualShare = 0.6
 /** What somebody says of rework weighs as much as so many coats on record (planning value). */
 const saidWeighs = 20
 const lookBack = 365 * 24 * 60 * 60_000

@@ -80,7 +80,7 @@ function batchOfActivity(given: StudioProblem, facts: PlanFacts): Map<string, nu
 }
 
 /** Reads off a plan what starting so would mean. */
-export function startPlan(asked: Asked, plan: Plan, given: StudioProblem, facts: PlanFacts, batches: Batches): StartPlan {
+function startPlan(asked: Asked, plan: Plan, given: StudioProblem, facts: PlanFacts, batches: Batches): StartPlan {
   const batchOf = batchOfActivity(given, facts)
   const own = plan.entries.filter(entry => batchOf.get(entry.activity) === batchToCome)
   const at = (minutes: number) => given.zeroAt + minutes * minute

@@ -31,15 +31,11 @@ export const noDate = {
 } as const
 
 export const promiseWords = {
-  title: 'When it will be ready',
   open: 'A date to promise',
   openFor: (name: string) => `A date to promise for ${name}`,
-  ask: 'Find a date',
   waiting: 'Going through 200 ways the work may go',
   failed: 'The date could not be worked out. Nothing was changed.',
-  again: 'Work it out again',
   needs: 'Choose a schedule, how many pieces, a place and a start: then a date can be worked out.',
-  planned: 'by the plan',
   likely: 'likely',
   promise: 'promise',
   table: 'The same as figures',
@@ -55,7 +51,6 @@ export const promiseWords = {
   shareHint: 'The rest goes on customers, errands and absence.',
   keep: 'Keep these figures',
   orderName: 'Whom it is promised to: name of the order',
-  noted: (when: string) => `Promised: ${when}.`,
   chosen: (when: string) => `${when} is promised with the start of the batch.`,
   unchoose: 'Do not promise it',
   notKept: 'The batch has started, but its date was not kept. Promise it on the week’s page.',
