@@ -31,7 +31,8 @@ beforeAll(async () => {
   const bowl = schedules.find(each => /bowl/i.test(each.name))
   const started = await owner.post('/api/batches', { clientKey: 'week-of-test', name: 'Bowls', scheduleId: bowl?.id, pieces: ['Bowl 1', 'Bowl 2'], placeId: place.id, order: { name: 'Fair', dueAt: new Date(Date.now() + 86_400_000).toISOString() }, startsAt: new Date().toISOString() })
   expect(started.status, JSON.stringify(started.body)).toBe(200)
-  await expect.poll(async () => (await blocksOf()).length, { timeout: 30_000, interval: 500 }).toBeGreaterThan(0)
+  for (let tries = 0; tries < 60 && (await blocksOf()).length === 0; tries++) await new Promise(resolve => setTimeout(resolve, 500))
+  expect((await blocksOf()).length).toBeGreaterThan(0)
 }, 180_000)
 afterAll(async () => {
   await browser.close()

@@ -65,6 +65,8 @@ describe('what a wall link is told', () => {
   it('keeps orders, batches, materials, minutes and the plan inside', () => {
     expect(told.pieces.map(({ order, batch }) => [order, batch.name])).toEqual(told.pieces.map(() => [null, '']))
     expect(new Set(told.pieces.flatMap(piece => piece.groups.flatMap(group => group.films.map(film => film.material))))).toEqual(new Set(['']))
+    const moved = [{ turnId: 1, pieceId: 1, piece: 'Box 1', batchId: 1, stepKind: 'coat' as const, step: 'Second paint', wasAt: 0, isAt: 1, movedAt: 0, why: { code: 'pinned' as const, by: 'Moss' } }]
+    expect(wallState({ ...state, moved }).moved).toEqual([])
     expect([told.sessions, told.hours, told.rooms.map(room => room.air)]).toEqual([[], [], told.rooms.map(() => null)])
   })
 })
