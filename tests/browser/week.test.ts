@@ -84,7 +84,7 @@ describe('the plan on Week', () => {
     await page.getByLabel('Of which kind').selectOption('shelf')
     await page.getByRole('button', { name: 'Try it' }).click()
     await page.getByRole('columnheader', { name: 'With it' }).waitFor()
-    await page.getByText(/No batch|All batches|Lateness stays/).first().waitFor()
+    await page.getByRole('region', { name: 'What would change it' }).getByText(/No batch|All batches|Lateness stays/).first().waitFor()
     expect((await owner.get('/api/hours')).body).toEqual(before.body)
     expect(await axeProblems(page)).toEqual([])
     await page.getByText(/holds? the plan back\./).first().waitFor({ timeout: 20_000 })
