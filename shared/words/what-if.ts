@@ -117,7 +117,3 @@ export function differenceText(difference: Difference): string {
   const moved = batches.filter(each => isNoticeable(each) || (each.beforeAt === null) !== (each.afterAt === null)).length
   return [lateness, ...windows, moved === 0 ? 'No batch ends noticeably otherwise.' : `${moved === 1 ? 'One batch ends' : `${moved} batches end`} otherwise.`].join(' ')
 }
-
-/** What is waited for, in a row's head. */
-export const waitedText = (what: BottleneckState['waited'][number]['for']) => what === 'hands' ? 'Hands' : what === 'hours' ? 'Opening hours' : what === 'other' ? 'Dust, vapour, like work' : placeKindsText(what)
-export const waitText = (minutes: number) => minutes < 15 ? '–' : longSpan(minutes)

@@ -92,7 +92,7 @@ describe('a shut room in the plan', () => {
   it('is planned around for a day where nobody can tell when it is clear', () => {
     studio.lay(studio.board, 'nitrocellulose-lacquer', 'running')
     const { facts, toCome } = studio.read()
-    toCome.shut.set(studio.rooms.spray, { operatorId: null, clearAt: null })
+    if (toCome.shut instanceof Map) toCome.shut.set(studio.rooms.spray, { operatorId: null, clearAt: null })
     const [buff = ''] = studio.idsOf('buff')
     expect(floorOf({ ...studioProblem(facts, toCome, now), facts, toCome }, buff)).toEqual([24 * 60])
   })
