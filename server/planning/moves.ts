@@ -32,8 +32,9 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
     const isAt = given.zeroAt + entry.start * minute
     const was = last.get(turnId)
     found.toldAt.set(turnId, isAt)
-    if (!was || !waiting.has(turnId) || was.dueAt <= now) continue
-    const heardAt = was.toldAt ?? was.startsAt
+    // A start that nobody has heard of can move in silence.
+    if (!was || was.toldAt === null || !waiting.has(turnId) || was.dueAt <= now) continue
+    const heardAt = was.toldAt
     const moved = isNoticed(heardAt, isAt, now)
     if (!moved) found.toldAt.set(turnId, heardAt)
     const earlier = told.get(turnId)

@@ -14,7 +14,7 @@ export const planStrips = {
   none: 'Nothing is planned yet.',
   noneSays: 'As soon as a batch has work for hands, it stands here by the hour.',
   people: 'Hands',
-  places: 'Places',
+  places: 'What lies where, place by place',
   list: 'The plan as a list',
   placeList: 'The places as a list',
   earlierDays: 'Earlier days',

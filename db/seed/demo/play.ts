@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm'
-import { finishingSchedule, part, piece, ragDuty } from '~~/db/schema'
+import { finishingSchedule, part, piece, planChange, planEntry, ragDuty } from '~~/db/schema'
 import type { Calendar } from '~~/db/seed/demo/calendar'
 import type { DemoKey } from '~~/db/seed/demo/people'
 import type { PlaceKey, Places, RoomKey } from '~~/db/seed/demo/places'
@@ -123,6 +123,13 @@ export class Player {
     const { db, studioId } = this.stage
     const planned = await replan(db, studioId, at, atOnce)
     if (!planned.ok) throw new Error(`The demo could not be planned: ${planned.message}`)
+  }
+
+  /** Nobody has looked at the last plan yet: what a longer search makes of it is no news to anybody. */
+  unheard() {
+    const { db, studioId } = this.stage
+    db.update(planEntry).set({ toldAt: null }).where(scoped(planEntry, studioId)).run()
+    db.delete(planChange).where(scoped(planChange, studioId)).run()
   }
 
   /** Somebody goes through what was planned and says what has not gone on yet; of one batch nobody speaks. */

@@ -58,7 +58,10 @@ function planning({ at, desk, now }: Calendar): Told[] {
   return [
     { at: plannedAt, play: player => player.plan(plannedAt) },
     { at: askedAt, play: player => player.answerSilence(askedAt, 'maker', 'Dusk panel') },
-    { at: now, play: player => player.plan(now) },
+    { at: now, play: async (player) => {
+      await player.plan(now)
+      player.unheard()
+    } },
   ]
 }
 
