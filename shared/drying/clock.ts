@@ -20,6 +20,8 @@ const dayMs = 24 * 60 * minuteMs
 /** Air at knots: temperature, RH and humidity ratio side by side. */
 interface AirSamples { temps: Float64Array, rhs: Float64Array, ratios: Float64Array }
 
+interface Knots { times: Float64Array, air: AirSamples }
+
 /**
  * A room's air from `since` on, sampled every quarter of an hour and at each reading up to the last reading, and from there on as one local
  * day that repeats for ever. Its cumulative rates are added as materials ask for them. Made anew when a reading changes.
@@ -42,6 +44,8 @@ export interface RoomClock {
   /** Filled as materials ask: cumulative rates, and spells of cold or damp. */
   rates: Map<string, RateTable>
   spells: Map<string, Spell[]>
+  /** Past and day with a knot more wherever they pass a minimum temperature. */
+  bent: Map<number, { past: Knots, day: Knots }>
 }
 
 /** A stretch in which the air keeps to a condition, ms UTC. */
@@ -102,22 +106,27 @@ export function roomClock(room: RoomAir, since: number, tools: DryingTools): Roo
     ahead: { times: aheadTimes, air: sample(tools.air, coming.temps, coming.dewPoints) },
     past: sample(tools.air, read.temps, read.dewPoints),
     day: sample(tools.air, dayTemps, new Float64Array(dayTemps.length).fill(trackDewPoint(track, turnAt))),
-    tools, rates: new Map(), spells: new Map(),
+    tools, rates: new Map(), spells: new Map(), bent: new Map(),
   }
 }
 
 const quarters = Float64Array.from({ length: 97 }, (_, i) => i * quarterMs)
 
-interface Knots { times: Float64Array, air: AirSamples }
+// No film that stops in the cold asks for the air's own water.
+const none = new Float64Array(0)
 
 /** The same air with a knot more wherever it passes one of some temperatures, at which a rate bends. */
 function bentAt({ times, air }: Knots, limits: readonly number[]): Knots {
-  const { temps, rhs, ratios } = air
+  const { temps, rhs } = air
   const added: { at: number, before: number, share: number }[] = []
   for (let i = 1; i < times.length; i++) {
     const from = temps[i - 1]!
-    const rise = temps[i]! - from
-    const shares = limits.map(limit => (limit - from) / rise).filter(share => share > 0 && share < 1).sort((a, b) => a - b)
+    const to = temps[i]!
+    // Hardly any stretch passes one: the many thousands that do not must cost nothing.
+    let passes = false
+    for (let k = 0; k < limits.length; k++) passes ||= (from < limits[k]!) !== (to < limits[k]!)
+    if (!passes) continue
+    const shares = limits.map(limit => (limit - from) / (to - from)).filter(share => share > 0 && share < 1).sort((a, b) => a - b)
     for (const share of shares) added.push({ at: times[i - 1]! + share * (times[i]! - times[i - 1]!), before: i - 1, share })
   }
   if (added.length === 0) return { times, air }
@@ -131,7 +140,19 @@ function bentAt({ times, air }: Knots, limits: readonly number[]): Knots {
     return all
   }
   const between = (values: Float64Array) => woven(values, added.map(({ before, share }) => values[before]! + (values[before + 1]! - values[before]!) * share))
-  return { times: woven(times, added.map(each => each.at)), air: { temps: between(temps), rhs: between(rhs), ratios: between(ratios) } }
+  return { times: woven(times, added.map(each => each.at)), air: { temps: between(temps), rhs: between(rhs), ratios: none } }
+}
+
+/** Past and day as materials of one minimum temperature want them; null for those that do not stop in the cold. */
+function bentFor(clock: RoomClock, minTempC: number | null): { past: Knots, day: Knots } {
+  const [past, day] = [{ times: clock.times, air: clock.past }, { times: quarters, air: clock.day }]
+  if (minTempC === null) return { past, day }
+  const known = clock.bent.get(minTempC)
+  if (known) return known
+  const limits = [minTempC, minTempC - coldSpanC]
+  const made = { past: bentAt(past, limits), day: bentAt(day, limits) }
+  clock.bent.set(minTempC, made)
+  return made
 }
 
 function forcesOf(tools: DryingTools, driver: Driver, samples: AirSamples, material: PreparedMaterial): Float64Array {
@@ -159,13 +180,10 @@ export function rateTable(clock: RoomClock, driver: Driver, material: PreparedMa
   const key = `${driver}/${fuses(driver) ? minTempC : ''}/${driver === 'moisture' ? material.referenceRatio : ''}`
   const known = clock.rates.get(key)
   if (known) return known
-  const limits = minTempC !== null && fuses(driver) ? [minTempC, minTempC - coldSpanC] : []
-  const summed = (knots: Knots) => {
-    const { times, air } = bentAt(knots, limits)
-    return forceSum(times, forcesOf(clock.tools, driver, air, material))
-  }
-  const past = summed({ times: clock.times, air: clock.past })
-  const day = summed({ times: quarters, air: clock.day })
+  const bent = bentFor(clock, fuses(driver) ? minTempC : null)
+  const summed = ({ times, air }: Knots) => forceSum(times, forcesOf(clock.tools, driver, air, material), times === quarters ? quarterMs : null)
+  const past = summed(bent.past)
+  const day = summed(bent.day)
   const atBend = new Float64Array(clock.bends.length)
   atBend[0] = whole(past)
   for (let i = 1; i < atBend.length; i++) {

@@ -1,13 +1,13 @@
 import { lastBefore } from '#shared/air/room'
 
-/** A force that runs straight from knot to knot, with its running sum: times in ms ascending, sums in force x ms, 0 at the first knot. */
-export interface ForceSum { times: Float64Array, forces: Float64Array, sums: Float64Array }
+/** A force that runs straight from knot to knot, with its running sum: times in ms ascending, sums in force x ms, 0 at the first knot. `step`: the ms between all knots, null where they differ. */
+export interface ForceSum { times: Float64Array, forces: Float64Array, sums: Float64Array, step: number | null }
 
 /** Trapezoids over the knots, exact for a force that is straight between them. */
-export function forceSum(times: Float64Array, forces: Float64Array): ForceSum {
+export function forceSum(times: Float64Array, forces: Float64Array, step: number | null): ForceSum {
   const sums = new Float64Array(times.length)
   for (let i = 1; i < sums.length; i++) sums[i] = sums[i - 1]! + (forces[i - 1]! + forces[i]!) / 2 * (times[i]! - times[i - 1]!)
-  return { times, forces, sums }
+  return { times, forces, sums, step }
 }
 
 /** All that the last knot has. */
@@ -15,9 +15,9 @@ export const whole = ({ sums }: ForceSum) => sums[sums.length - 1]!
 
 /** The sum up to an instant between the first knot and the last; 0 before, all of it after. */
 export function sumAt(force: ForceSum, at: number): number {
-  const { times, forces, sums } = force
-  const i = lastBefore(times, at)
-  if (i < 0) return 0
+  const { times, forces, sums, step } = force
+  if (at < times[0]!) return 0
+  const i = step === null ? lastBefore(times, at) : Math.min(times.length - 1, Math.floor((at - times[0]!) / step))
   if (i === times.length - 1) return sums[i]!
   const width = times[i + 1]! - times[i]!
   const share = (at - times[i]!) / width
