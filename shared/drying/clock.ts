@@ -66,17 +66,19 @@ function sample(air: AirTables, temps: Float64Array, dewPoints: Float64Array): A
   return { temps, rhs, ratios }
 }
 
-/** Every quarter of an hour and every reading from `since` to `turnAt`, both ends in. */
+/** Every quarter of an hour and every reading from `since` to `turnAt`, both ends in; and the last instant before clocks change, when the hour of the day jumps. */
 function knots(track: RoomTrack, since: number, turnAt: number): Float64Array {
-  const times = new Float64Array(Math.ceil((turnAt - since) / quarterMs) + track.times.length + 2)
+  const changes = track.zone.starts.filter(at => at > since && at < turnAt).map(at => at - 1)
+  const readings = changes.length === 0 ? track.times : Float64Array.from([...track.times, ...changes]).sort()
+  const times = new Float64Array(Math.ceil((turnAt - since) / quarterMs) + readings.length + 2)
   let count = 0
-  let reading = lastBefore(track.times, since) + 1
+  let reading = lastBefore(readings, since) + 1
   let quarter = since
   while (quarter < turnAt) {
     times[count++] = quarter
     const next = Math.min(turnAt, Math.floor(quarter / quarterMs) * quarterMs + quarterMs)
-    for (; reading < track.times.length && track.times[reading]! < next; reading++) times[count++] = track.times[reading]!
-    if (reading < track.times.length && track.times[reading]! === next) reading++
+    for (; reading < readings.length && readings[reading]! < next; reading++) times[count++] = readings[reading]!
+    if (reading < readings.length && readings[reading]! === next) reading++
     quarter = next
   }
   times[count++] = turnAt
