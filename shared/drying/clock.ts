@@ -85,6 +85,22 @@ function knots(track: RoomTrack, since: number, turnAt: number): Float64Array {
   return times.slice(0, count)
 }
 
+/** Kelvin between two knots, of air or dew point, up to which a force is as good as straight (planning value). */
+const straightK = 1
+
+/** The same instants with more between them where the air changes fast: a door thrown open, a heater lit. */
+function finer(track: RoomTrack, times: Float64Array): Float64Array {
+  const { temps, dewPoints } = trackMany(track, times)
+  const more: number[] = []
+  for (let i = 1; i < times.length; i++) {
+    const parts = Math.ceil(Math.max(Math.abs(temps[i]! - temps[i - 1]!), Math.abs(dewPoints[i]! - dewPoints[i - 1]!)) / straightK)
+    const width = times[i]! - times[i - 1]!
+    // What steps within a millisecond, where clocks change, has nothing between.
+    if (width > 1) for (let part = 1; part < parts; part++) more.push(times[i - 1]! + width * part / parts)
+  }
+  return more.length === 0 ? times : Float64Array.from([...times, ...more]).sort()
+}
+
 /**
  * Builds a room's clock for coats applied at or after `since` (ms UTC). Cheap enough to do again after every reading: no wet bulb is
  * worked out, and the far future is one day repeated. `readings` out of order are sorted.
@@ -94,7 +110,7 @@ export function roomClock(room: RoomAir, since: number, tools: DryingTools): Roo
   const { zone } = track
   const lastReadingAt = track.times.length > 0 ? track.times[track.times.length - 1]! : null
   const turnAt = Math.max(since, lastReadingAt ?? since)
-  const times = knots(track, since, turnAt)
+  const times = finer(track, knots(track, since, turnAt))
   const midnight = turnAt - ((turnAt + offsetAt(zone, turnAt)) % dayMs + dayMs) % dayMs
   const anchor = trackTemp(track, turnAt) - shapeAt(track.shape, localTimeOfDay(zone, turnAt))
   const dayTemps = track.shape.map(swing => anchor + swing)
