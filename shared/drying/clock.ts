@@ -89,8 +89,7 @@ function knots(track: RoomTrack, since: number, turnAt: number): Float64Array {
 const straightK = 1
 
 /** The same instants with more between them where the air changes fast: a door thrown open, a heater lit. */
-function finer(track: RoomTrack, times: Float64Array): Float64Array {
-  const { temps, dewPoints } = trackMany(track, times)
+function finer(times: Float64Array, { temps, dewPoints }: ReturnType<typeof trackMany>): Float64Array {
   const more: number[] = []
   for (let i = 1; i < times.length; i++) {
     const parts = Math.ceil(Math.max(Math.abs(temps[i]! - temps[i - 1]!), Math.abs(dewPoints[i]! - dewPoints[i - 1]!)) / straightK)
@@ -110,11 +109,13 @@ export function roomClock(room: RoomAir, since: number, tools: DryingTools): Roo
   const { zone } = track
   const lastReadingAt = track.times.length > 0 ? track.times[track.times.length - 1]! : null
   const turnAt = Math.max(since, lastReadingAt ?? since)
-  const times = finer(track, knots(track, since, turnAt))
+  const coarse = knots(track, since, turnAt)
+  const coarseRead = trackMany(track, coarse)
+  const times = finer(coarse, coarseRead)
   const midnight = turnAt - ((turnAt + offsetAt(zone, turnAt)) % dayMs + dayMs) % dayMs
   const anchor = trackTemp(track, turnAt) - shapeAt(track.shape, localTimeOfDay(zone, turnAt))
   const dayTemps = track.shape.map(swing => anchor + swing)
-  const read = trackMany(track, times)
+  const read = times === coarse ? coarseRead : trackMany(track, times)
   const aheadTimes = Float64Array.from({ length: 192 }, (_, i) => turnAt + (i + 1) * quarterMs)
   const coming = trackMany(track, aheadTimes)
   const bends = [{ at: turnAt, offset: -midnight }]
