@@ -13,8 +13,9 @@ export const makers: readonly string[] = [
 
 const escaped = (name: string) => name.replaceAll(/[.*+?^${}()|[\]\\]/g, '\\$&')
 // Words of other trades too, and so only meant as a name when written as one.
-const capitalOnly = new Set(['DAP', 'MITRA', 'CAMEO', 'Plaid', 'Rash', 'Gorilla', 'Franklin', 'Mohawk', 'Ingal', 'Great Lakes', 'Osmo'])
-const patterns = makers.map(name => ({ name, pattern: new RegExp(`(?<![A-Za-z0-9_])${escaped(name)}(?![A-Za-z0-9])`, capitalOnly.has(name) ? '' : 'i') }))
+const capitalOnly = new Set(['3M', 'DAP', 'MITRA', 'CAMEO', 'Plaid', 'Rash', 'Gorilla', 'Franklin', 'Mohawk', 'Ingal', 'Great Lakes', 'Osmo'])
+// What stands beside these letters belongs to a word, an identifier or the base64 of a digest, where short names turn up by chance.
+const patterns = makers.map(name => ({ name, pattern: new RegExp(`(?<![A-Za-z0-9_+/])${escaped(name)}(?![A-Za-z0-9+/=])`, capitalOnly.has(name) ? '' : 'i') }))
 
 /** The names of makers that stand in a text. */
 export function makersIn(text: string): string[] {
