@@ -215,6 +215,12 @@ export function clockWords(minuteOfDay: number): string {
   return clockFace(minuteOfDay).padStart(5, '0')
 }
 
+/** The minute of the day that a time field says, 0..1439; null for what is no time. */
+export function minutesOfClock(text: string): number | null {
+  const [, hours, minutes] = /^([01]?\d|2[0-3]):([0-5]\d)$/.exec(text.trim()) ?? []
+  return hours === undefined || minutes === undefined ? null : Number(hours) * 60 + Number(minutes)
+}
+
 /** When something was done, as the time keys say it: minutes before the press of the act's key, or an instant (ms UTC). */
 export type TimeAnswer = { kind: 'ago', minutes: number } | { kind: 'at', at: number }
 

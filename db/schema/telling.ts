@@ -1,9 +1,21 @@
-import { index, integer, primaryKey, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
+import { sql } from 'drizzle-orm'
+import { check, index, integer, primaryKey, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
 import { channels, deliveryStatuses, reminderStatuses } from '#shared/terms'
 import type { Channel } from '#shared/terms'
-import { id, instant, oneOf, studioKey, within } from './columns'
+import { belongsTo, id, instant, oneOf, studioKey, within } from './columns'
 import { member, studioColumn } from './studio'
 import { act } from './acts'
+
+/** When a member is not to be called, in local wall time: minutes since midnight, perhaps over midnight. Fire calls are made all the same. */
+export const quietHours = sqliteTable('quiet_hours', {
+  studioId: studioColumn(),
+  memberId: integer('member_id').primaryKey(),
+  fromMin: integer('from_min').notNull(),
+  toMin: integer('to_min').notNull(),
+}, t => [
+  belongsTo(t, t.memberId, member),
+  check('quiet_hours_span', sql`${t.fromMin} between 0 and 1439 and ${t.toMin} between 0 and 1439 and ${t.fromMin} <> ${t.toMin}`),
+])
 
 /** Why anybody is called at all. `groupKey` keeps twelve covers of one row to one call. */
 export const cause = sqliteTable('cause', {

@@ -4,6 +4,7 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import type { CallKind } from '#shared/terms'
 import { callWords } from '#shared/words/calls'
 import { isUrgent } from './claim'
+import { heldUntil } from './quiet'
 import type { Channels, OutgoingCall, SendOutcome } from './types'
 
 const minute = 60_000
@@ -29,8 +30,8 @@ export async function deliverReminder(db: Database, reminderId: number, now: num
 }
 
 /**
- * Commits *sending* under the stable id before anything leaves. Null when the call was closed meanwhile or nobody
- * listens there any more.
+ * Commits *sending* under the stable id before anything leaves. Null when the call was closed meanwhile, nobody
+ * listens there any more, or it is somebody's quiet hours, which it waits out.
  */
 function beginSending(db: Database, deliveryId: number, now: number): OutgoingCall | null {
   return db.transaction((tx) => {
@@ -38,6 +39,11 @@ function beginSending(db: Database, deliveryId: number, now: number): OutgoingCa
       .innerJoin(reminder, eq(delivery.reminderId, reminder.id)).innerJoin(cause, eq(reminder.causeId, cause.id)).innerJoin(studio, eq(delivery.studioId, studio.id))
       .where(and(eq(delivery.id, deliveryId), eq(delivery.status, 'queued'), eq(reminder.status, 'claimed'))).get()
     if (!row) return null
+    const quiet = heldUntil(tx, row.delivery.memberId, row.kind as CallKind, now)
+    if (quiet !== null) {
+      tx.update(delivery).set({ nextTryAt: quiet, changedAt: now, problem: callWords.delivery.quiet }).where(eq(delivery.id, deliveryId)).run()
+      return null
+    }
     const to = addressOf(tx, row.delivery)
     if (!to) {
       tx.update(delivery).set({ status: 'gone', nextTryAt: null, changedAt: now, problem: callWords.delivery.nobodyThere }).where(eq(delivery.id, deliveryId)).run()

@@ -61,6 +61,7 @@ export const callWords = {
     unreadableBody: 'It could not be read here. Look at the board.',
   },
   delivery: {
+    quiet: 'Held for quiet hours.',
     notNeeded: 'It was no longer needed before it could be sent.',
     nobodyThere: 'Nobody listens there any more.',
     stopped: 'The server stopped while sending: it may have arrived.',

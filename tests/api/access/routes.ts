@@ -102,6 +102,8 @@ export const routes: Record<string, RouteCase> = {
   // The secret opens it to whoever holds it: that is what it is for.
   'calendar/[token].get.ts': { least: 'anyone', apart: 'none', at: 'calendarToken' },
   'calls/index.get.ts': { least: 'helper', apart: 'view' },
+  'calls/quiet.get.ts': { least: 'helper', apart: 'view' },
+  'calls/quiet.put.ts': { least: 'helper', apart: 'none', body: () => ({ quiet: { fromMin: 1260, toMin: 420 } }) },
   'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
 
   'pieces/[id].get.ts': { least: 'helper', apart: 'row', at: 'piece' },

@@ -115,6 +115,25 @@ describe('days off', () => {
   })
 })
 
+describe('quiet hours', () => {
+  it('are one\'s own, and are kept, changed and ended', async () => {
+    const quiet = () => owner.get('/api/calls/quiet').then(answer => answer.body)
+    expect(await quiet()).toEqual({ quiet: null })
+    await owner.put('/api/calls/quiet', { quiet: { fromMin: 1260, toMin: 420 } })
+    await owner.put('/api/calls/quiet', { quiet: { fromMin: 1320, toMin: 420 } })
+    expect(await quiet()).toEqual({ quiet: { fromMin: 1320, toMin: 420 } })
+    const maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
+    expect((await maker.get('/api/calls/quiet')).body).toEqual({ quiet: null })
+    await owner.put('/api/calls/quiet', { quiet: null })
+    expect(await quiet()).toEqual({ quiet: null })
+  })
+  it('refuse what is no time of day, and an end at their beginning', async () => {
+    const refused = async (fromMin: unknown, toMin: unknown) => (await owner.put<Refused>('/api/calls/quiet', { quiet: { fromMin, toMin } })).body.data.fields
+    expect(await refused(null, 1440)).toEqual({ 'quiet.fromMin': 'Give a time of day such as 21:00 (minutes since midnight, 0 to 1439).', 'quiet.toMin': 'Give a time of day such as 21:00 (minutes since midnight, 0 to 1439).' })
+    expect(await refused(420, 420)).toEqual({ 'quiet.toMin': 'Quiet hours end at another time than they begin.' })
+  })
+})
+
 describe('the body of a request', () => {
   it('must be JSON', async () => {
     const response = await fetch(`${server.origin}/api/rooms`, { method: 'POST', headers: { 'content-type': 'application/json', 'cookie': owner.cookie() }, body: '{ not json' })
