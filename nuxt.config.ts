@@ -23,6 +23,8 @@ export default defineNuxtConfig({
     session: { name: 'stillwet', password: '', maxAge: 60 * 60 * 24 * 60, cookie: { sameSite: 'lax', secure: true, httpOnly: true } },
   },
   security,
+  // Files are counted while they come in (server/utils/upload.ts), each kind against its own limit, and refused in a sentence.
+  routeRules: { '/api/attachments/**': { security: { requestSizeLimiter: false } } },
   nitro: {
     compressPublicAssets: true,
     imports: { autoImport: false },

@@ -40,6 +40,8 @@ export const attachment = sqliteTable('attachment', {
   kind: text('kind').$type<'photo' | 'data sheet'>().notNull(),
   sha256: text('sha256').notNull(),
   bytes: integer('bytes').notNull(),
+  name: text('name'),
+  addedAt: instant('added_at'),
 }, t => [
   studioKey(t), within(t, t.actId, act), within(t, t.materialVersionId, materialVersion), oneOf('attachment_kind', t.kind, ['photo', 'data sheet']),
   check('attachment_bytes', sql`${t.bytes} > 0`), check('attachment_of_one', sql`(${t.actId} is null) <> (${t.materialVersionId} is null)`),

@@ -54,7 +54,8 @@ export async function makeArchive({ databaseFile, storageFolder }: Places, folde
     rmSync(target, { recursive: true })
     throw new Refused(`The copy was not kept. ${wrong}`)
   }
-  if (existsSync(storageFolder)) cpSync(storageFolder, join(target, storageName), { recursive: true })
+  // What is being written this moment has no row yet in the copied database, and may be gone before it is read.
+  if (existsSync(storageFolder)) cpSync(storageFolder, join(target, storageName), { recursive: true, filter: path => !path.endsWith('.part') })
   return target
 }
 

@@ -33,7 +33,9 @@ afterEach(() => rmSync(folder, { recursive: true }))
 describe('a backup', () => {
   it('holds what was committed, while somebody has the database open and goes on writing', async () => {
     const open = addStudio('Fir Lane')
+    writeFileSync(join(places.storageFolder, 'half.part'), 'still being written')
     const made = await makeArchive(places, join(folder, 'kept'), now)
+    expect(readdirSync(join(made, 'storage'))).toEqual(['sheet.pdf'])
     open.insert(studio).values({ name: 'Too late', zone: 'UTC', madeAt: now }).run()
     open.$client.close()
     expect(made).toBe(join(folder, 'kept', 'stillwet-2026-05-04T09-00-00'))

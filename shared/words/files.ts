@@ -1,0 +1,27 @@
+import type { FileType } from '#shared/file-types'
+
+const typeNames: Record<FileType, string> = {
+  'application/pdf': 'a PDF', 'image/jpeg': 'a JPEG picture', 'image/png': 'a PNG picture', 'image/heic': 'a HEIC picture', 'image/webp': 'a WebP picture', 'image/gif': 'a GIF picture',
+}
+
+/** "a PDF", "a JPEG picture". */
+export const fileTypeText = (type: FileType) => typeNames[type]
+
+const megabyte = 1_000_000
+
+/** "2.4 MB", "310 kB". Bytes. */
+export function fileSizeText(bytes: number): string {
+  return bytes >= megabyte ? `${Number((bytes / megabyte).toFixed(1))} MB` : `${Math.max(1, Math.round(bytes / 1000))} kB`
+}
+
+const oneOf = (types: readonly FileType[]) => types.map(fileTypeText).join(' or ')
+
+/** Why a file is not kept. */
+export const fileRefusals = {
+  empty: 'The file is empty. Choose another.',
+  tooLarge: (limit: number) => `The file is larger than ${fileSizeText(limit)}. Choose a smaller one.`,
+  heic: (wanted: readonly FileType[]) => `This is a HEIC picture, which many browsers cannot show. Save it as ${oneOf(wanted)} first; a phone’s camera settings call it “most compatible”.`,
+  otherType: (found: FileType, wanted: readonly FileType[]) => `This is ${fileTypeText(found)}. It must be ${oneOf(wanted)}.`,
+  unknownType: (wanted: readonly FileType[]) => `What is in this file is none we know, whatever its name says. It must be ${oneOf(wanted)}.`,
+  lost: 'The file itself is no longer in the storage folder. Put it back from a backup, or add it again.',
+} as const
