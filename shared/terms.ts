@@ -56,8 +56,12 @@ export type ReadingSource = typeof readingSources[number]
 export const actors = ['member', 'bench', 'sensor', 'system'] as const
 export type Actor = typeof actors[number]
 
-export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone'] as const
+export const actKinds = ['batch started', 'began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'touch test', 'stripped', 'moved', 'not there', 'seen', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'enough', 'window missed', 'air', 'intake answered', 'room opened', 'rags answered', 'gone', 'back', 'regrouped', 'cancelled'] as const
 export type ActKind = typeof actKinds[number]
+
+/** What became of a piece that is not here any more. */
+export const goneWays = ['sold', 'given away', 'lost', 'discarded'] as const
+export type GoneWay = typeof goneWays[number]
 
 export const callKinds = ['last moment to start', 'ready', 'before you leave', 'check the room', 'promise slipping', 'rags', 'vapour'] as const
 export type CallKind = typeof callKinds[number]

@@ -1,7 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, real, sqliteTable, text, unique, uniqueIndex } from 'drizzle-orm/sqlite-core'
 import { intakeQuestions } from '#shared/terms'
-import type { IntakeQuestion } from '#shared/terms'
+import type { GoneWay, IntakeQuestion } from '#shared/terms'
 import { act } from './acts'
 import { id, instant, oneOf, studioKey, within } from './columns'
 import { carrier, place } from './places'
@@ -63,11 +63,13 @@ export const piece = sqliteTable('piece', {
   areaM2: real('area_m2'),
   version: integer('version').notNull().default(1),
   goneAt: instant('gone_at'),
+  goneHow: text('gone_how').$type<GoneWay>(),
   stepsDone: integer('steps_done').notNull().default(0),
   stepsOf: integer('steps_of').notNull().default(0),
 }, t => [
   studioKey(t), within(t, t.batchId, batch), within(t, t.branchId, branch), unique().on(t.batchId, t.ordinal),
   check('piece_size', sql`${t.sizeUnits} > 0`), index('piece_here').on(t.studioId, t.batchId).where(sql`${t.goneAt} is null`),
+  index('piece_gone').on(t.studioId, t.goneAt).where(sql`${t.goneAt} is not null`),
 ])
 
 /** A simple piece has one part, 'whole'. Joining ends a part's own stay, it never deletes the part. */

@@ -5,6 +5,7 @@ import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
 import { mayHandle } from '~~/server/services/handling'
 import { refuseByCaution } from '~~/server/services/act-cautions'
+import { makeBatch, refuseRegroup } from '~~/server/services/regroup'
 import { noteStart } from '~~/server/services/vapour-starts'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, conflict, impossible, isRefusal, malformed, notAllowed } from '~~/server/utils/errors'
@@ -51,6 +52,7 @@ export function recordAct(db: Database, studioId: number, teller: Teller, reques
     const subjects = subjectsFor(tx, studioId, request, body, pieces)
     if (isRefusal(subjects)) return subjects
     const actId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: request.kind, doneAt: Date.parse(request.doneAt), toldAt: now, acting: actingOf(teller), body, subjects })
+    if (request.kind === 'regrouped' && typeof body.name === 'string') makeBatch(tx, studioId, actId, body.name, pieces.map(each => each.id))
     const folded = refold(tx, studioId, pieces.map(each => each.id))
     const problem = folded.flatMap(each => each.folded.problems).find(each => each.actId === actId)
     if (problem) return impossible(problemSentence(problem.why))
@@ -72,7 +74,7 @@ export const actingOf = (teller: Teller): Acting => ('member' in teller ? { acto
 export function problemSentence(why: ProblemCode): string {
   const sentences: Record<ProblemCode, string> = {
     'no such step': actRefusals.noStep, 'nothing left to do': actRefusals.nothingLeft, 'no film to test': actRefusals.noFilm,
-    'nothing held': actRefusals.nothingHeld, 'before its start': actRefusals.beforeStart,
+    'nothing held': actRefusals.nothingHeld, 'before its start': actRefusals.beforeStart, 'still here': actRefusals.notGone,
   }
   return sentences[why]
 }
@@ -84,12 +86,13 @@ function findPieces(tx: Transaction, studioId: number, ids: readonly number[]): 
 }
 
 function findRefusal(tx: Transaction, studioId: number, teller: Teller, request: ActRequest, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
-  const gone = pieces.find(each => each.goneAt !== null)
-  if (gone) return impossible(actRefusals.gonePiece(gone.name))
+  const gone = pieces.find(each => (each.goneAt === null) === (request.kind === 'back'))
+  if (gone) return impossible(request.kind === 'back' ? actRefusals.stillHere(gone.name) : actRefusals.gonePiece(gone.name))
   if (request.pieces.some(each => pieces.find(row => row.id === each.id)?.version !== each.version)) return conflict(actRefusals.somebodyElse, pieceStates(tx, studioId, pieces.map(each => each.id)))
   return checkTime(Date.parse(request.doneAt), now)
     ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
     ?? checkReferences(tx, studioId, body)
+    ?? (request.kind === 'regrouped' ? refuseRegroup(tx, studioId, pieces.map(each => each.id), body) : null)
     ?? refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
 }
 
@@ -101,7 +104,7 @@ export function checkTime(doneAt: number, now: number): Refusal | null {
 
 const benchKinds: readonly TellableKind[] = ['coat on', 'touch test', 'moved', 'it is out', 'seen']
 const workKinds: readonly TellableKind[] = ['began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'enough']
-const makerKinds: readonly TellableKind[] = ['stripped', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'gone', 'intake answered', 'air']
+const makerKinds: readonly TellableKind[] = ['stripped', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'gone', 'back', 'regrouped', 'cancelled', 'intake answered', 'air']
 
 function checkTeller(tx: Transaction, studioId: number, teller: Teller, kind: TellableKind, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
   if (!('member' in teller)) return benchKinds.includes(kind) ? null : notAllowed()

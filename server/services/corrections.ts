@@ -3,6 +3,7 @@ import { act, part } from '~~/db/schema'
 import { actingOf, checkTime, parseActBody } from '~~/server/services/acts'
 import type { Recorded, Teller } from '~~/server/services/acts'
 import { refuseByCaution } from '~~/server/services/act-cautions'
+import { refuseOtherSchedule } from '~~/server/services/regroup'
 import { refuseNewSolventWork } from '~~/server/services/vapour-starts'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
@@ -39,6 +40,8 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
     const subjects = correctedSubjects(tx, studioId, old, was, request, now)
     if (isRefusal(subjects)) return subjects
     const doneAt = request.doneAt === undefined ? old.doneAt : Date.parse(request.doneAt)
+    const wrongBatch = old.kind === 'regrouped' && !request.takeBack ? refuseOtherSchedule(tx, studioId, piecesOf(tx, studioId, subjects.map(each => each.partId)), body, old.rootActId ?? old.id) : null
+    if (wrongBatch) return wrongBatch
     const caution = request.takeBack ? null : refuseCorrected(tx, studioId, teller, { old, body, was, subjects }, now)
     if (caution) return caution
     const rootId = old.rootActId ?? old.id

@@ -1,10 +1,10 @@
 import { eq, inArray } from 'drizzle-orm'
-import { carrier, material, materialVersion, place } from '~~/db/schema'
+import { batch, carrier, material, materialVersion, place } from '~~/db/schema'
 import type { act } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import type { FoldedPiece } from '~~/server/work/refold'
-import { airNoteKinds, holds, milestoneNames } from '#shared/terms'
+import { airNoteKinds, goneWays, holds, milestoneNames } from '#shared/terms'
 import type { ActDetail } from '#shared/words/steps'
 
 type ActRow = typeof act.$inferSelect
@@ -25,6 +25,7 @@ export function actDetails(db: Database, studioId: number, { folded }: FoldedPie
   const materials = materialNames(db, studioId, acts.flatMap(row => number(row.body.materialVersionId) ?? []))
   const places = new Map(db.select({ id: place.id, name: place.name }).from(place).where(scoped(place, studioId)).all().map(row => [row.id, row.name]))
   const carriers = new Map(db.select({ id: carrier.id, name: carrier.name }).from(carrier).where(scoped(carrier, studioId)).all().map(row => [row.id, row.name]))
+  const batches = new Map(acts.some(row => row.kind === 'regrouped') ? db.select({ id: batch.id, name: batch.name }).from(batch).where(scoped(batch, studioId)).all().map(row => [row.id, row.name]) : [])
   const steps = new Map(folded.steps.map(step => [step.key, step]))
   return ({ kind, body }) => {
     const step = steps.get(text(body.step) ?? text(body.to) ?? '')
@@ -35,7 +36,7 @@ export function actDetails(db: Database, studioId: number, { folded }: FoldedPie
       milestone: milestoneNames.find(name => name === body.milestone) ?? null, reached: body.reached === true,
       hold: holds.find(hold => hold === body.hold) ?? (kind === 'it is out' ? null : step?.hold ?? null),
       place: carried && where ? `${where}, ${carried}` : where, reason: text(body.reason) ?? text(body.recovery),
-      air: airNoteKinds.find(each => each === body.kind) ?? null, answer: text(body.question) && text(body.answer) ? `${text(body.question)}, ${text(body.answer)}` : text(body.answer),
+      air: airNoteKinds.find(each => each === body.kind) ?? null, gone: goneWays.find(way => way === body.how) ?? null, batch: kind === 'regrouped' ? text(body.name) ?? batches.get(number(body.batchId) ?? 0) ?? null : null, answer: text(body.question) && text(body.answer) ? `${text(body.question)}, ${text(body.answer)}` : text(body.answer),
     }
   }
 }

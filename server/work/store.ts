@@ -1,6 +1,6 @@
 import { eq, inArray } from 'drizzle-orm'
 import type { InferInsertModel } from 'drizzle-orm'
-import { airNote, branch, part, piece, stay } from '~~/db/schema'
+import { airNote, batch, branch, part, piece, stay } from '~~/db/schema'
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { difference, holds } from '~~/server/work/difference'
@@ -17,10 +17,22 @@ export function storeFold(tx: Transaction, studioId: number, { piece: row, parts
   storeStays(tx, studioId, partIds, folded.stays)
   storeAirNotes(tx, studioId, partIds, folded.airNotes)
   storeJoins(tx, studioId, partIds, folded.joins)
-  const branchId = storeBranch(tx, studioId, row, folded.branch)
+  const batchId = batchOf(tx, studioId, folded.batch) ?? row.batchId
+  const branchId = storeBranch(tx, studioId, batchId, folded.branch)
   const counted = folded.steps.filter(step => step.status !== 'left out')
   const done = counted.filter(step => step.status === 'done' || (step.status === 'resting' && !step.atFront))
-  tx.update(piece).set({ version: row.version + 1, goneAt: folded.goneAt, branchId, stepsDone: done.length, stepsOf: counted.length }).where(scoped(piece, studioId, eq(piece.id, row.id))).run()
+  tx.update(piece).set({ version: row.version + 1, goneAt: folded.goneAt, goneHow: folded.goneHow, ...batchId === row.batchId ? {} : { batchId, ordinal: ordinalIn(tx, studioId, batchId, row.ordinal) }, branchId, stepsDone: done.length, stepsOf: counted.length }).where(scoped(piece, studioId, eq(piece.id, row.id))).run()
+}
+
+function batchOf(tx: Transaction, studioId: number, wanted: FoldedPiece['folded']['batch']): number | null {
+  if (wanted === null || 'batchId' in wanted) return wanted?.batchId ?? null
+  return tx.select({ id: batch.id }).from(batch).where(scoped(batch, studioId, eq(batch.actId, wanted.madeByActId))).get()?.id ?? null
+}
+
+/** Its own number in the row, or the next free one after the last where another has it. */
+function ordinalIn(tx: Transaction, studioId: number, batchId: number, own: number): number {
+  const taken = tx.select({ ordinal: piece.ordinal }).from(piece).where(scoped(piece, studioId, eq(piece.batchId, batchId))).all().map(row => row.ordinal)
+  return taken.includes(own) ? Math.max(...taken) + 1 : own
 }
 
 function storeStays(tx: Transaction, studioId: number, partIds: number[], wanted: FoldedPiece['folded']['stays']) {
@@ -51,10 +63,10 @@ function storeJoins(tx: Transaction, studioId: number, partIds: number[], joins:
   }
 }
 
-function storeBranch(tx: Transaction, studioId: number, row: FoldedPiece['piece'], wanted: FoldedPiece['folded']['branch']): number | null {
+function storeBranch(tx: Transaction, studioId: number, batchId: number, wanted: FoldedPiece['folded']['branch']): number | null {
   if (!wanted) return null
   const known = tx.select().from(branch).where(scoped(branch, studioId, eq(branch.actId, wanted.actId))).get()
-  const values: InferInsertModel<typeof branch> = { studioId, batchId: row.batchId, fromStepKey: wanted.fromStep, actId: wanted.actId, rejoinedActId: wanted.rejoinedActId }
+  const values: InferInsertModel<typeof branch> = { studioId, batchId, fromStepKey: wanted.fromStep, actId: wanted.actId, rejoinedActId: wanted.rejoinedActId }
   if (!known) return tx.insert(branch).values(values).returning({ id: branch.id }).get().id
   if (!holds(known, values)) tx.update(branch).set(values).where(scoped(branch, studioId, eq(branch.id, known.id))).run()
   return known.id

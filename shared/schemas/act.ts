@@ -1,5 +1,6 @@
 import * as z from 'zod/mini'
-import { airNoteKinds, coatSizes, exhaustAnswers, grounds, holds, intakeQuestions, milestoneNames } from '#shared/terms'
+import { airNoteKinds, coatSizes, exhaustAnswers, goneWays, grounds, holds, intakeQuestions, milestoneNames } from '#shared/terms'
+import { fields } from '#shared/words/batch'
 
 const id = z.int().check(z.positive())
 const stepKey = z.string().check(z.minLength(1), z.maxLength(80))
@@ -50,7 +51,11 @@ export const actBodies = {
   'enough': z.object({ step: stepKey }),
   'air': z.object({ kind: z.enum(airNoteKinds), minutes: z.optional(z.nullable(z.int().check(z.gte(1), z.lte(10_080)))) }),
   'intake answered': z.object({ question: z.enum(intakeQuestions), answer: z.enum(['not tested', 'tested, none', 'tested, found']) }),
-  'gone': z.object({}),
+  'gone': z.object({ how: z.optional(z.enum(goneWays)) }),
+  'back': z.object({ placeId: id, carrierId: z.optional(z.nullable(id)) }),
+  /** To a batch there is, or to a new one of this name. */
+  'regrouped': z.object({ batchId: z.optional(id), name: z.optional(z.string().check(z.trim(), z.minLength(1, fields.batchName), z.maxLength(60, fields.batchName))) }),
+  'cancelled': z.object({ reason: z.optional(shortText) }),
 } as const
 export type TellableKind = keyof typeof actBodies
 

@@ -2,6 +2,7 @@
 export const actRefusals = {
   somebodyElse: 'Somebody else was at this piece a moment ago. Here is how it stands now; say it again if it still holds.',
   noPiece: 'One of these pieces is not in this studio.',
+  stillHere: (name: string) => `${name} is in the studio: it cannot come back.`,
   gonePiece: (name: string) => `${name} has left the studio.`,
   future: 'The time lies ahead of now. Give an earlier one.',
   tooOld: 'The time is more than 14 days back. Corrections reach back 14 days.',
@@ -11,6 +12,7 @@ export const actRefusals = {
   noStep: 'This step is not one of the piece’s steps.',
   nothingLeft: 'Nothing of this step is left to do on the piece.',
   noFilm: 'There is no film on this piece that could be tested.',
+  notGone: 'It is in the studio: it cannot come back.',
   nothingHeld: 'Nothing of this piece is in clamps, press or under weight.',
   beforeStart: 'The time lies before the coat went on.',
   noPlace: 'This place is not in this studio.',

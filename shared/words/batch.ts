@@ -17,5 +17,14 @@ export const batchRefusals = {
   sameNames: 'Two pieces have the same name. Give each its own.',
 } as const
 
+/** Why pieces cannot be of one batch. */
+export const regroupRefusals = {
+  one: 'Choose a batch for the pieces, or give a new one its name.',
+  noBatch: 'This batch is not in this studio.',
+  there: (batch: string) => `They are of ${batch} already.`,
+  otherSchedule: (piece: string) => `${piece} goes by another schedule, or another edition of it. A batch has one.`,
+  sameName: (piece: string) => `Two pieces would be called ${piece}. Give one of them another name first.`,
+} as const
+
 /** The one part of a piece that has no parts. */
 export const wholePart = { key: 'whole', name: 'whole' } as const

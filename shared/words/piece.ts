@@ -161,7 +161,7 @@ export function forecastText({ likelyAt, p90At }: NonNullable<ActLine['forecast'
 
 const problems: Record<ProblemCode, string> = {
   'no such step': actRefusals.noStep, 'nothing left to do': actRefusals.nothingLeft, 'no film to test': actRefusals.noFilm,
-  'nothing held': actRefusals.nothingHeld, 'before its start': actRefusals.beforeStart,
+  'nothing held': actRefusals.nothingHeld, 'before its start': actRefusals.beforeStart, 'still here': actRefusals.notGone,
 }
 
 /** Why an act cannot be true since something before it was corrected. */

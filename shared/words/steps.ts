@@ -1,4 +1,4 @@
-import type { ActKind, Hold, MilestoneName, StepKind } from '#shared/terms'
+import type { ActKind, GoneWay, Hold, MilestoneName, StepKind } from '#shared/terms'
 
 /** A name in the middle of a line: "Second varnish" as "second varnish", but "PVA on the spine" as it is. */
 export function lowerFirst(name: string): string {
@@ -89,7 +89,12 @@ export interface ActDetail {
   reason?: string | null
   air?: 'sun' | 'shade' | 'warm air' | 'moving' | 'covered' | null
   answer?: string | null
+  gone?: GoneWay | null
+  batch?: string | null
 }
+
+/** What became of a piece, as a fact. */
+export const goneTexts: Record<GoneWay, string> = { 'sold': 'sold', 'given away': 'given away', 'lost': 'lost', 'discarded': 'discarded' }
 
 const outOf: Record<Hold, string> = { clamps: 'out of the clamps', press: 'out of the press', weight: 'out from under the weight' }
 const airs = { 'sun': 'in the sun', 'shade': 'in the shade', 'warm air': 'warm air on it', 'moving': 'air moving over it', 'covered': 'covered' }
@@ -127,7 +132,10 @@ const history: Record<ActKind, (detail: ActDetail) => string> = {
   'intake answered': ({ answer }) => answer ? `intake answered: ${answer}` : 'intake answered',
   'room opened': ({ place }) => place ? `opened ${place}` : 'room opened',
   'rags answered': ({ answer }) => answer ? `rags: ${answer}` : 'rags answered',
-  'gone': () => 'gone out',
+  'gone': ({ gone }) => gone ? goneTexts[gone] : 'gone out',
+  'back': ({ place }) => place ? `back in the studio: ${place}` : 'back in the studio',
+  'regrouped': ({ batch }) => batch ? `put with the batch ${batch}` : 'put with another batch',
+  'cancelled': ({ reason }) => reason ? `batch cancelled: ${reason}` : 'batch cancelled',
 }
 
 /** Beside an act that was taken back again. */

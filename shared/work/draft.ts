@@ -10,7 +10,7 @@ export function startDraft(seed: Seed): Draft {
     parts: seed.parts,
     steps: seed.steps.map(step => ({ ...step, targets: [...step.targets], turns: step.turns.map(turn => ({ ...turn })) })),
     links: seed.links.map(link => ({ ...link })),
-    coats: [], stays: [], tests: [], doubts: [], clearings: [], airNotes: [], joins: [], branch: null, goneAt: null, problems: [],
+    coats: [], stays: [], tests: [], doubts: [], clearings: [], airNotes: [], joins: [], branch: null, goneAt: null, goneHow: null, batch: null, problems: [],
   }
 }
 

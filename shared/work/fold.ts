@@ -1,8 +1,8 @@
 import type { ActKind } from '#shared/terms'
 import { coatOn, enough, glueUpOn, itIsOut, stripped } from '#shared/work/films'
 import { droppedOut, rejoined, windowMissed } from '#shared/work/splices'
-import { began, checkDone, leftOut, notOnYet, resumed, setAside, workDone } from '#shared/work/steps'
-import { air, gone, moved, notThere, seen, touchTest } from '#shared/work/whereabouts'
+import { began, cancelled, checkDone, leftOut, notOnYet, resumed, setAside, workDone } from '#shared/work/steps'
+import { air, back, gone, moved, notThere, regrouped, seen, started, touchTest } from '#shared/work/whereabouts'
 import { isFilm, latestAt, startDraft } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
 import type { Folded, Seed, Step, WorkAct } from '#shared/work/types'
@@ -12,7 +12,7 @@ const nothing: Telling = () => {}
 
 /** What each kind of act does to a piece. Acts about a room or an answer change nothing here. */
 const tellings: Record<ActKind, Telling> = {
-  'batch started': moved,
+  'batch started': started,
   'began': began,
   'coat on': coatOn,
   'glue-up on': glueUpOn,
@@ -38,6 +38,9 @@ const tellings: Record<ActKind, Telling> = {
   'room opened': nothing,
   'rags answered': nothing,
   'gone': gone,
+  'back': back,
+  'regrouped': regrouped,
+  'cancelled': cancelled,
 }
 
 /**
@@ -53,9 +56,10 @@ export function fold(seed: Seed, acts: readonly WorkAct[]): Folded {
   return folded
 }
 
-/** By when it was done; two at one instant by the order in which they were first told. */
+/** By when it was done; two at one instant by the order in which they were first told. The start is first, though it may be planned for tomorrow. */
 function inOrder(acts: readonly WorkAct[]): WorkAct[] {
-  return [...acts].filter(act => act.subjects.length > 0).sort((a, b) => latestAt(a) - latestAt(b) || a.rootId - b.rootId)
+  const rank = (act: WorkAct) => (act.kind === 'batch started' ? 0 : 1)
+  return [...acts].filter(act => act.subjects.length > 0).sort((a, b) => rank(a) - rank(b) || latestAt(a) - latestAt(b) || a.rootId - b.rootId)
 }
 
 /** A film's step is done once what waited for it has begun: nobody says "it has dried". */

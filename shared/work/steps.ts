@@ -1,6 +1,6 @@
 import { cannotBe, finishTurn, latestAt, openTurn, settleStatus, stepNamed } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
-import type { WorkAct } from '#shared/work/types'
+import type { Step, WorkAct } from '#shared/work/types'
 
 /** Somebody is at it: hands off until they say what came of it. */
 export function began(draft: Draft, act: WorkAct) {
@@ -59,6 +59,17 @@ export function leftOut(draft: Draft, act: WorkAct) {
       if (draft.links.some(link => link.from === before.from && link.to === after.to)) continue
       draft.links.push({ ...before, to: after.to })
     }
+  }
+}
+
+/** The batch is not finished: nothing more is begun on it. What dries goes on drying, and what is held is still taken out. */
+export function cancelled(draft: Draft) {
+  for (const step of draft.steps) {
+    if (step.status === 'done' || step.status === 'left out') continue
+    const begun = step.turns.some(turn => turn.kind === 'work' && turn.status === 'done')
+    for (const turn of step.turns) if (turn.status !== 'done' && (turn.kind === 'work' || !begun)) Object.assign(turn, { status: 'left out', doingMemberId: null })
+    Object.assign(step, { untilEnough: false, asideReason: null, status: begun ? 'waiting' : 'left out' } satisfies Partial<Step>)
+    if (begun) settleStatus(step)
   }
 }
 

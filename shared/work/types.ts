@@ -1,4 +1,4 @@
-import type { ActKind, AirNoteKind, Actor, CoatKind, CoatSize, DustClass, Ground, Hold, MilestoneName, PlaceKind, Risk, Role, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
+import type { ActKind, AirNoteKind, Actor, CoatKind, CoatSize, DustClass, GoneWay, Ground, Hold, MilestoneName, PlaceKind, Risk, Role, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
 
 // Instants are milliseconds UTC throughout; minutes are whole.
 
@@ -105,8 +105,11 @@ export interface Folded {
   joins: { partId: number, intoPartId: number, actId: number }[]
   branch: { fromStep: string, actId: number, rejoinedActId: number | null } | null
   goneAt: number | null
+  goneHow: GoneWay | null
+  /** The batch it belongs to: one by its number, or the one that an act made; null while no act says. */
+  batch: { batchId: number } | { madeByActId: number } | null
   /** Acts that can no longer be true after a correction: kept, and listed with the reason. */
   problems: { actId: number, why: ProblemCode }[]
 }
 
-export type ProblemCode = 'no such step' | 'nothing left to do' | 'no film to test' | 'nothing held' | 'before its start'
+export type ProblemCode = 'no such step' | 'nothing left to do' | 'no film to test' | 'nothing held' | 'before its start' | 'still here'

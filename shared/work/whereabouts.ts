@@ -1,4 +1,4 @@
-import { airNoteKinds, milestoneNames } from '#shared/terms'
+import { airNoteKinds, goneWays, milestoneNames } from '#shared/terms'
 import type { AirNoteKind, MilestoneName } from '#shared/terms'
 import { cannotBe, latestAt, movesWith, newestCoat } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
@@ -33,10 +33,29 @@ export function seen(draft: Draft, act: WorkAct) {
   }
 }
 
+/** The start of its batch puts it on its place. */
+export function started(draft: Draft, act: WorkAct) {
+  draft.batch = { madeByActId: act.rootId }
+  moved(draft, act)
+}
+
+/** To another batch, one there is or one that this act makes. All that was done stays with the piece. */
+export function regrouped(draft: Draft, act: WorkAct) {
+  draft.batch = typeof act.body.batchId === 'number' ? { batchId: act.body.batchId } : { madeByActId: act.rootId }
+}
+
+/** Here again after it was gone. */
+export function back(draft: Draft, act: WorkAct) {
+  if (draft.goneAt === null) return cannotBe(draft, act, 'still here')
+  Object.assign(draft, { goneAt: null, goneHow: null })
+  moved(draft, act)
+}
+
 /** Sold, scrapped or taken away: it holds no place any more. */
 export function gone(draft: Draft, act: WorkAct) {
   const at = latestAt(act)
   draft.goneAt = at
+  draft.goneHow = goneWays.find(way => way === act.body.how) ?? null
   for (const stay of draft.stays) if (stay.toAt === null) stay.toAt = Math.max(stay.fromAt, at)
 }
 
