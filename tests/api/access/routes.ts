@@ -101,6 +101,7 @@ export const routes: Record<string, RouteCase> = {
   'calendar/index.delete.ts': { least: 'helper', apart: 'view' },
   // The secret opens it to whoever holds it: that is what it is for.
   'calendar/[token].get.ts': { least: 'anyone', apart: 'none', at: 'calendarToken' },
+  'export.get.ts': { least: 'owner', apart: 'view' },
   'calls/index.get.ts': { least: 'helper', apart: 'view' },
   'calls/quiet.get.ts': { least: 'helper', apart: 'view' },
   'calls/quiet.put.ts': { least: 'helper', apart: 'none', body: () => ({ quiet: { fromMin: 1260, toMin: 420 } }) },
