@@ -6,7 +6,7 @@ export default defineNuxtConfig({
   compatibilityDate: '2026-05-01',
   telemetry: false,
   devtools: { enabled: false },
-  modules: ['@pinia/nuxt', '@nuxtjs/tailwindcss', 'nuxt-auth-utils', 'nuxt-security', '@nuxt/eslint', './config/service-worker', './config/planner-worker'],
+  modules: ['@pinia/nuxt', '@nuxtjs/tailwindcss', 'nuxt-auth-utils', 'nuxt-security', '@nuxt/eslint', './config/service-worker', './config/workers'],
   css: ['@fontsource/atkinson-hyperlegible/400.css', '@fontsource/atkinson-hyperlegible/700.css'],
   tailwindcss: { cssPath: '~/assets/css/tailwind.css', viewer: false, exposeConfig: false },
   // A component is called by its file name wherever it lies: components/base/BaseButton.vue is <BaseButton>.

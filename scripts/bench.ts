@@ -1,4 +1,5 @@
 import { cpus } from 'node:os'
+import { benchAsking } from './bench/asking'
 import { benchBoard } from './bench/board'
 import { benchPlanner } from './bench/planner'
 import { benchPredict } from './bench/predict'
@@ -7,7 +8,7 @@ import { benchReadings } from './bench/readings'
 import { benchStart } from './bench/start'
 import { benchVapour } from './bench/vapour'
 
-const benches: Record<string, () => string[] | Promise<string[]>> = { board: benchBoard, planner: benchPlanner, predict: benchPredict, promise: benchPromise, readings: benchReadings, start: benchStart, vapour: benchVapour }
+const benches: Record<string, () => string[] | Promise<string[]>> = { asking: benchAsking, board: benchBoard, planner: benchPlanner, predict: benchPredict, promise: benchPromise, readings: benchReadings, start: benchStart, vapour: benchVapour }
 
 const usage = `npm run bench [-- NAME ...]
 

@@ -1,5 +1,5 @@
-import { copyFrom, differenceOf, inWorker, orBefore } from '~~/server/planning/questions'
-import type { Asker, Base } from '~~/server/planning/questions'
+import { copyFrom, differenceOf, orBefore } from '~~/server/planning/questions'
+import type { Ask, Base } from '~~/server/planning/questions'
 import { handsOf } from '~~/server/planning/hands'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { waitedFor } from '#shared/planning/waited'
@@ -39,7 +39,7 @@ function studioOpen(facts: PlanFacts, zeroAt: number, horizon: number): readonly
  * studio as it is had. The best first: fewer windows missed, then less lateness, then the sum of finishes.
  * @param now ms UTC
  */
-export async function bottleneckOf(studioId: number, base: Base, now: number, ask: Asker = inWorker): Promise<Omit<BottleneckState, 'planMadeAt' | 'seen'>> {
+export async function bottleneckOf(base: Base, now: number, ask: Ask): Promise<Omit<BottleneckState, 'planMadeAt' | 'seen'>> {
   const { facts, given } = base.changed
   const { problem, zeroAt } = given
   const dates = Array.from({ length: daysShown }, (_, ahead) => addDays(localDate(now, studioZone(facts.owner.zone)), ahead))
@@ -50,7 +50,7 @@ export async function bottleneckOf(studioId: number, base: Base, now: number, as
   const tried: { kind: PlaceKind | null, problem: PlanProblem }[] = [...kinds.map(kind => ({ kind, problem: withOnePlace(problem, kind) })), { kind: null, problem: withOneHand(problem, studioOpen(facts, zeroAt, problem.horizon)) }]
   const more: OneMore[] = []
   for (const each of tried) {
-    const solved = await ask(studioId, copyFrom(each.problem, base.from))
+    const solved = await ask(copyFrom(each.problem, base.from), base.searched)
     if (!solved) continue
     more.push({ kind: each.kind, waitedMin: waited.find(one => one.for === (each.kind ?? 'hands'))?.minutes ?? dates.map(() => 0), difference: differenceOf(base, base.changed, orBefore(solved, base.plan)) })
   }

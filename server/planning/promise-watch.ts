@@ -23,28 +23,32 @@ const rescueScenarios = 60
 
 interface Watched { orderId: number, promiseId: number, promisedAt: number, dateAt: number, batchIds: number[] }
 
+/** How one promise stands. `rescue`: the batch that would save it moved back, null where none would, undefined where it was not looked for. */
+export interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, rescue: number | null | undefined }
+
+/** Whether some promise is to be looked at: its plan has changed since it was last. `now` in ms UTC. */
+export const isAnyToLookAt = (db: Database, studioId: number, now: number) => toLookAt(db, studioId, now).length > 0
+
 /**
- * Looks at every promised date whose plan has changed since it was last looked at, and notes whether it holds. Where one begins to slip, looks
- * for a batch that would save it, moved back.
+ * Looks at every promised date whose plan has changed since it was last looked at. Where one begins to slip, looks for a batch that would
+ * save it, moved back. Writes nothing.
  * @param now ms UTC
- * @returns how many were looked at
  */
-export async function watchPromises(db: Database, studioId: number, now: number, search: Search): Promise<number> {
+export async function reckonPromises(db: Database, studioId: number, now: number, search: Search): Promise<Reckoned[]> {
   const due = toLookAt(db, studioId, now)
   const facts = due.length === 0 ? null : readPlanFacts(db, studioId)
-  if (!facts) return 0
+  if (!facts) return []
   const luck = luckOf(readBasis(db, studioId, now))
   const made = await estimatePlan(db, facts, now, luck, search, { key: `watch ${studioId}`, ...asPlanned })
-  if (!made) return 0
-  let looked = 0
+  if (!made) return []
+  const looked: Reckoned[] = []
   for (const watched of due) {
     const found = estimateOf(made, facts, watched.batchIds)
     if (!found) continue
     const at = (minutes: number) => made.given.zeroAt + minutes * minute
     const slips = at(found.cautious) > watched.promisedAt
     const rescue = slips && !wasSlipping(db, watched) ? await findRescue(db, facts, watched, now, luck, search) : undefined
-    note(db, studioId, watched, { likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, rescue }, now)
-    looked += 1
+    looked.push({ watched, likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, rescue })
   }
   return looked
 }
@@ -85,10 +89,8 @@ function withoutBatch(facts: PlanFacts, batchId: number): PlanFacts {
   return { ...facts, steps: facts.steps.filter(step => !pieces.has(step.pieceId)) }
 }
 
-interface Noted { likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, rescue: number | null | undefined }
-
-/** Writes how a promise stands. It begins to slip once, until it holds again and slips anew. */
-function note(db: Database, studioId: number, { orderId, promiseId }: Watched, { likelyAt, dateAt, slips, cause, rescue }: Noted, now: number) {
+/** Writes how a promise stands. It begins to slip once, until it holds again and slips anew. `now` in ms UTC. */
+export function notePromise(db: Database, studioId: number, { watched: { orderId, promiseId }, likelyAt, dateAt, slips, cause, rescue }: Reckoned, now: number) {
   db.transaction((tx) => {
     const known = tx.select().from(promiseWatch).where(eq(promiseWatch.orderId, orderId)).get()
     const begins = slips && !(known?.slipping ?? false)

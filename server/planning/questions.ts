@@ -1,9 +1,9 @@
 import { changedProblem } from '~~/server/planning/changed-facts'
 import type { Changed } from '~~/server/planning/changed-facts'
+import type { Search } from '~~/server/planning/search'
 import type { Database } from '~~/server/utils/database'
 import { impossible, isRefusal } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
-import { usePlanRunner } from '~~/server/utils/planRunner'
 import { startsOf } from '#shared/planning/types'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 import type { BatchFare, Difference, WhatIf, WhatIfAnswer } from '#shared/schemas/what-if'
@@ -11,20 +11,18 @@ import { whatIfWords } from '#shared/words/what-if'
 
 const minute = 60_000
 /** One search of a question: so short that a page of them is answered in two seconds. */
-export const questionMs = 280
+const questionMs = 200
 
-/** Solves a copy of a problem under a small budget; null when it did not come to an end. */
-export type Asker = (studioId: number, problem: PlanProblem) => Promise<Plan | null>
+/** Solves a copy of a problem under a small budget, with `most` schedules; null when it did not come to an end. */
+export type Ask = (problem: PlanProblem, most?: number) => Promise<Plan | null>
 
-let asked = 0
-/** In the worker; each question has a key of its own, so that none ends another. */
-export const inWorker: Asker = async (studioId, problem) => {
-  const done = await usePlanRunner().run(`question ${studioId} ${++asked}`, problem, { millis: questionMs })
+export const askerOf = (search: Search): Ask => async (problem, schedules) => {
+  const done = await search('question', problem, { millis: questionMs, schedules })
   return done.ok && done.broken.length === 0 ? done.plan : null
 }
 
-/** The studio as it is: its problem, a plan to begin from, and that plan searched once more, which is what every change is measured against. */
-export interface Base { changed: Changed, from: Plan, plan: Plan }
+/** The studio as it is: its problem, a plan to begin from, and that plan searched once more in so many schedules, which is what every change is measured against. */
+export interface Base { changed: Changed, from: Plan, plan: Plan, searched: number }
 
 /** A copy that begins from a plan and asks no price for moving: what a change makes possible counts, not how far it is from the plan of now. */
 export const copyFrom = (problem: PlanProblem, from: Pick<Plan, 'entries'> | null): PlanProblem => ({
@@ -36,13 +34,13 @@ export const copyFrom = (problem: PlanProblem, from: Pick<Plan, 'entries'> | nul
  * What changes are measured against. It is searched as often as they will be and from the same plan, so that a difference
  * is never the fruit of a longer search.
  */
-export async function baseOf(db: Database, studioId: number, now: number, ask: Asker = inWorker): Promise<Base | Refusal> {
+export async function baseOf(db: Database, studioId: number, now: number, ask: Ask): Promise<Base | Refusal> {
   const changed = changedProblem(db, studioId, null, now)
   if (isRefusal(changed)) return changed
   if (changed.given.problem.activities.length === 0) return impossible(whatIfWords.nothingPlanned)
-  const from = await ask(studioId, copyFrom(changed.given.problem, null))
-  const plan = from && await ask(studioId, copyFrom(changed.given.problem, from))
-  return from && plan ? { changed, from, plan: betterOf(from, plan) } : impossible(whatIfWords.notAnswered)
+  const from = await ask(copyFrom(changed.given.problem, null))
+  const plan = from && await ask(copyFrom(changed.given.problem, from))
+  return from && plan ? { changed, from, plan: betterOf(from, plan), searched: plan.schedules } : impossible(whatIfWords.notAnswered)
 }
 
 /** Of two plans of one problem the one with fewer left out, then the cheaper. */
@@ -51,8 +49,8 @@ function betterOf(one: Plan, other: Plan): Plan {
 }
 
 /** What one change makes of the plan, row by row; nothing is kept. */
-export async function whatIf(studioId: number, change: WhatIf, changed: Changed, base: Base, ask: Asker = inWorker): Promise<WhatIfAnswer | Refusal> {
-  const solved = await ask(studioId, copyFrom(changed.given.problem, base.from))
+export async function whatIf(change: WhatIf, changed: Changed, base: Base, ask: Ask): Promise<WhatIfAnswer | Refusal> {
+  const solved = await ask(copyFrom(changed.given.problem, base.from), base.searched)
   if (!solved) return impossible(whatIfWords.notAnswered)
   // More room or more hours take nothing away: the plan of before would still do.
   const plan = change.kind === 'places' ? orBefore(solved, base.plan) : solved

@@ -1,6 +1,6 @@
 import { setImmediate } from 'node:timers/promises'
+import { answer } from '~~/server/planner/answer'
 import { solve } from '~~/server/planner/solve'
-import { usePlanRunner } from '~~/server/utils/planRunner'
 import type { PlanResult } from '~~/server/utils/planRunner'
 import { check } from '#shared/planning/check'
 import type { Plan, PlanProblem } from '#shared/planning/types'
@@ -12,8 +12,12 @@ import type { Recipe } from '#shared/promise/types'
 export interface SearchLimits { millis: number, schedules?: number }
 export type Search = (key: string, problem: PlanProblem, limits: SearchLimits) => Promise<PlanResult>
 
-/** In the planner's worker. A newer question under the same key ends an older one. */
-export const searchInWorker: Search = (key, problem, limits) => usePlanRunner().run(key, problem, limits)
+/** In the thread that asks; any number but 0 in `cancel` ends it as superseded. */
+export const searchUnder = (cancel: SharedArrayBuffer): Search => (_key, problem, { millis, schedules = Infinity }) => {
+  const reply = answer({ id: 0, problem, seed: 1, schedules, millis, cancel })
+  if (Atomics.load(new Int32Array(cancel), 0) !== 0) return Promise.resolve({ ok: false, reason: 'superseded', message: 'A newer question was asked.' })
+  return Promise.resolve(reply.ok ? { ok: true, plan: reply.plan, broken: reply.broken } : { ok: false, reason: 'refused', message: reply.message })
+}
 
 /** In this thread and without a wait: for tests. */
 export const searchHere: Search = (_key, problem, { schedules = 12 }) => {

@@ -8,14 +8,13 @@ import { pinClash } from '~~/server/planning/pin-check'
 import type { PinStudio, Wanted } from '~~/server/planning/pin-check'
 import { studioProblem } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
-import type { Solver } from '~~/server/planning/replan'
+import type { Search } from '~~/server/planning/search'
 import { WaitsToCome } from '~~/server/planning/waits'
 import { memberNames } from '~~/server/services/member-names'
 import { change } from '~~/server/utils/change'
-import type { Database } from '~~/server/utils/database'
-import { absent, conflict, impossible } from '~~/server/utils/errors'
+import type { Database, Transaction } from '~~/server/utils/database'
+import { absent, conflict, impossible, isRefusal } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
-import { usePlanRunner } from '~~/server/utils/planRunner'
 import { owned, scoped } from '~~/server/utils/scoped'
 import type { PinBody } from '#shared/schemas/pin'
 import { studioZone } from '#shared/time'
@@ -23,22 +22,21 @@ import { pinWords } from '#shared/words/pins'
 
 const minute = 60_000
 /** Long enough for a first plan; the best one is made afterwards. */
-const trialMs = 120
+const trial = { millis: 120, schedules: 3 } as const
 
-const trial: Solver = (key, problem) => usePlanRunner().run(`pin ${key}`, problem, { schedules: 3, millis: trialMs })
+/** Times that break no rule, with the zero they count from, ms UTC. */
+interface CheckedPin { ok: true, zeroAt: number, wanted: Wanted[] }
 
 /**
- * Gives some turns a time of their own, one after another. Refused with the sentence that names the clash, before
- * anything is kept, when it breaks a rule by itself or leaves something else without a start.
+ * Whether some turns may have a time of their own, one after another. Refused with the sentence that names the clash where it breaks a rule
+ * by itself or leaves something else without a start. Nothing is kept.
  * @param now ms UTC
  */
-export async function pinTurns(db: Database, studioId: number, memberId: number, body: PinBody, now: number, solver: Solver = trial): Promise<{ ok: true } | Refusal> {
-  const known = db.select({ id: turn.id, status: turn.status }).from(turn).where(scoped(turn, studioId, inArray(turn.id, body.turnIds))).all()
+export async function checkPin(db: Database, studioId: number, body: PinBody, now: number, search: Search): Promise<CheckedPin | Refusal> {
   const names = memberNames(db, studioId)
-  if (known.length < new Set(body.turnIds).size || (body.memberId !== null && !names.has(body.memberId))) return absent()
-  if (known.some(each => each.status !== 'waiting')) return conflict(pinWords.begun)
+  const refusal = notWaiting(db, studioId, body.turnIds) ?? (body.memberId === null || names.has(body.memberId) ? null : absent())
   const read = readPlanFacts(db, studioId)
-  if (!read) return absent()
+  if (refusal || !read) return refusal ?? absent()
   const facts: PlanFacts = { ...read, pins: read.pins.filter(each => !body.turnIds.includes(each.turnId)) }
   const toCome = new WaitsToCome(db, facts, now)
   const given = studioProblem(facts, toCome, now)
@@ -47,11 +45,31 @@ export async function pinTurns(db: Database, studioId: number, memberId: number,
   if (startsAt < given.zeroAt) return impossible(pinWords.past(given.zeroAt, studio.clock), { startsAt: pinWords.past(given.zeroAt, studio.clock) })
   const wanted = wishes(studio, body, startsAt)
   if (wanted === null) return impossible(pinWords.notPlanned)
-  const clash = pinClash(studio, wanted) ?? await trialClash(studioId, given, wanted, solver)
-  if (clash !== null) return impossible(clash, { startsAt: clash })
-  return change(db, studioId, 'work', (tx): { ok: true } => {
+  const clash = pinClash(studio, wanted) ?? await trialClash(given, wanted, search)
+  return clash === null ? { ok: true, zeroAt: given.zeroAt, wanted } : impossible(clash, { startsAt: clash })
+}
+
+/** Turns that are not there, or that somebody has begun. */
+function notWaiting(db: Database | Transaction, studioId: number, turnIds: readonly number[]): Refusal | null {
+  const known = db.select({ status: turn.status }).from(turn).where(scoped(turn, studioId, inArray(turn.id, [...turnIds]))).all()
+  if (known.length < new Set(turnIds).size) return absent()
+  return known.some(each => each.status !== 'waiting') ? conflict(pinWords.begun) : null
+}
+
+/**
+ * Gives some turns a time of their own, one after another, once that has been checked.
+ * @param now ms UTC
+ */
+export async function pinTurns(db: Database, studioId: number, memberId: number, body: PinBody, now: number, checked: () => Promise<CheckedPin | Refusal>): Promise<{ ok: true } | Refusal> {
+  const found = await checked()
+  if (isRefusal(found)) return found
+  const { wanted, zeroAt } = found
+  return change(db, studioId, 'work', (tx): { ok: true } | Refusal => {
+    // Somebody may have begun while it was being checked.
+    const refusal = notWaiting(tx, studioId, body.turnIds)
+    if (refusal) return refusal
     tx.delete(pin).where(scoped(pin, studioId, inArray(pin.turnId, body.turnIds))).run()
-    tx.insert(pin).values(wanted.map(each => ({ studioId, turnId: each.turnId, startsAt: given.zeroAt + each.start * minute, memberId: each.hands[0] ? Number(each.hands[0].slice(1)) : null, madeAt: now, madeByMemberId: memberId }))).run()
+    tx.insert(pin).values(wanted.map(each => ({ studioId, turnId: each.turnId, startsAt: zeroAt + each.start * minute, memberId: each.hands[0] ? Number(each.hands[0].slice(1)) : null, madeAt: now, madeByMemberId: memberId }))).run()
     return { ok: true }
   })
 }
@@ -75,10 +93,10 @@ function wishes({ facts, given }: PinStudio, { turnIds, memberId }: PinBody, sta
 }
 
 /** What else would be left without a start, or miss its window, were it so. */
-async function trialClash(studioId: number, given: StudioProblem, wanted: readonly Wanted[], solver: Solver): Promise<string | null> {
+async function trialClash(given: StudioProblem, wanted: readonly Wanted[], search: Search): Promise<string | null> {
   const fixed = [...given.problem.fixed.filter(each => !wanted.some(wish => activityId(wish.turnId) === each.activity)), ...wanted.map(each => ({ activity: activityId(each.turnId), start: each.start, resources: each.hands }))]
-  const before = await solver(String(studioId), given.problem, () => {})
-  const after = await solver(String(studioId), { ...given.problem, fixed }, () => {})
+  const before = await search('before', given.problem, trial)
+  const after = await search('after', { ...given.problem, fixed }, trial)
   if (!before.ok || !after.ok) return pinWords.noPlanWithIt
   const known = new Set(clashSentences(before.plan, given))
   return clashSentences(after.plan, given).find(each => !known.has(each)) ?? null

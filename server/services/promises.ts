@@ -59,7 +59,7 @@ export async function promiseState(db: Database, studioId: number, batchId: numb
   const basis = readBasis(db, studioId, now)
   const ids = own.batches.map(each => each.id)
   const left = facts.pieces.some(piece => ids.includes(piece.batchId) && facts.steps.some(step => step.pieceId === piece.id && facts.turns.some(turn => turn.stepId === step.id)))
-  const made = left ? await estimatePlan(db, facts, now, luckOf(basis), search, { key: `promise ${studioId} ${batchId}`, ...asPlanned }) : null
+  const made = left ? await estimatePlan(db, facts, now, luckOf(basis), search, { key: `batch ${batchId}`, ...asPlanned }) : null
   const found = made && estimateOf(made, facts, ids)
   return {
     batchId, order: own.order?.name ?? null, batches: own.batches.map(each => each.name), dueAt: own.order?.dueAt ?? null,
@@ -77,7 +77,7 @@ function standingOf(db: Database, studioId: number, { id, promisedAt }: typeof o
 }
 
 /** What a batch that has not been started could be promised for, were it begun at its start. Nothing is stored. */
-export async function promiseForNew(db: Database, studioId: number, memberId: number, request: BatchToComeRequest, now: number, search: Search): Promise<DateEstimate | Refusal> {
+export async function promiseForNew(db: Database, studioId: number, request: BatchToComeRequest, now: number, search: Search): Promise<DateEstimate | Refusal> {
   const facts = readPlanFacts(db, studioId)
   if (!facts) return absent()
   if (!facts.places.some(place => place.id === request.placeId)) return malformed({ placeId: promiseRefusals.noPlace })
@@ -85,21 +85,21 @@ export async function promiseForNew(db: Database, studioId: number, memberId: nu
   const added = factsWithBatch(db, facts, { ...request, startsAt, dueAt: request.dueAt === null ? null : Date.parse(request.dueAt) }, startsAt)
   if (!added) return malformed({ scheduleId: fields.schedule })
   const basis = readBasis(db, studioId, now)
-  const made = await estimatePlan(db, added, now, luckOf(basis), search, { key: `promise ${studioId} new ${memberId}`, millis: searchMs })
+  const made = await estimatePlan(db, added, now, luckOf(basis), search, { key: 'new', millis: searchMs })
   const found = made && estimateOf(made, added, [batchToCome])
   if (made && found) return dateEstimate(found, made, added, basis)
   return made ? impossible(noDate.stuck) : conflict(promiseRefusals.newer)
 }
 
-/** Gives a date to whoever ordered a batch: a row that is never changed, and the date at its order. What was known at that moment is kept with it. */
-export async function makePromise(db: Database, studioId: number, batchId: number, request: PromiseRequest, now: number, search: Search): Promise<PromiseState | Refusal> {
+/** Gives a date to whoever ordered a batch: a row that is never changed, and the date at its order. What was known at that moment is kept with it: `estimated` reckons it once the request holds. */
+export async function makePromise(db: Database, studioId: number, batchId: number, request: PromiseRequest, now: number, estimated: () => Promise<PromiseState | Refusal>): Promise<PromiseState | Refusal> {
   const own = orderOf(db, studioId, batchId)
   if (!own) return absent()
   const dateAt = Date.parse(request.dateAt)
   if (dateAt <= now) return malformed({ dateAt: promiseRefusals.past }, promiseRefusals.past)
   if (dateAt > now + farthest) return malformed({ dateAt: promiseRefusals.far }, promiseRefusals.far)
   if (!own.order && request.orderName === undefined) return malformed({ orderName: promiseRefusals.noOrder }, promiseRefusals.noOrder)
-  const state = await promiseState(db, studioId, batchId, now, search)
+  const state = await estimated()
   if ('ok' in state) return state
   const { estimate } = state
   if (!estimate) return impossible(state.why ?? promiseRefusals.noEstimate)

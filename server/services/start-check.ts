@@ -32,7 +32,7 @@ interface Asked { start: StartPlan['start'], at: number, pinned: boolean }
  * What it would mean to start a batch now, this afternoon, at the next opening, or when it suits best: planned on a copy, nothing is stored.
  * Now, the afternoon and the opening begin the first step at that hour, come what may; the best leaves it to the plan.
  */
-export async function checkStart(db: Database, studioId: number, memberId: number, request: BatchToComeRequest, now: number, search: Search): Promise<{ plans: StartPlan[] } | Refusal> {
+export async function checkStart(db: Database, studioId: number, request: BatchToComeRequest, now: number, search: Search): Promise<{ plans: StartPlan[] } | Refusal> {
   const facts = readPlanFacts(db, studioId)
   if (!facts) return absent()
   if (!facts.places.some(place => place.id === request.placeId)) return malformed({ placeId: promiseRefusals.noPlace })
@@ -43,7 +43,7 @@ export async function checkStart(db: Database, studioId: number, memberId: numbe
     const added = factsWithBatch(db, facts, { ...given, startsAt: asked.at }, asked.pinned ? asked.at : null)
     if (!added) return malformed({ scheduleId: fields.schedule })
     const problem = studioProblem(added, new WaitsToCome(db, added, now), now)
-    const solved = await search(`start ${studioId} ${memberId} ${asked.start}`, problem.problem, { millis: searchMs })
+    const solved = await search(`start ${asked.start}`, problem.problem, { millis: searchMs })
     if (!solved.ok) return conflict(promiseRefusals.newer)
     plans.push(startPlan(asked, solved.plan, problem, added, batches))
   }

@@ -1,5 +1,4 @@
-import { searchInWorker } from '~~/server/planning/search'
-import { checkStart } from '~~/server/services/start-check'
+import { useAsker } from '~~/server/utils/asker'
 import { isRefusal } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { batchToCome } from '#shared/schemas/promise'
@@ -10,7 +9,7 @@ export default defineStudioHandler({
   may: 'start batches',
   body: batchToCome,
   run: async ({ db, studio, member, body, now }) => {
-    const found = await checkStart(db, studio.id, member.id, body, now, searchInWorker)
+    const found = await useAsker().ask(db, 'start', { studioId: studio.id, request: body }, now, `start ${studio.id} ${member.id}`)
     return isRefusal(found) ? found : toWire(found)
   },
 })

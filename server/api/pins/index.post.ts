@@ -1,4 +1,5 @@
 import { pinTurns } from '~~/server/services/pins'
+import { useAsker } from '~~/server/utils/asker'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { pinBody } from '#shared/schemas/pin'
 
@@ -6,5 +7,5 @@ import { pinBody } from '#shared/schemas/pin'
 export default defineStudioHandler({
   may: 'pin the plan',
   body: pinBody,
-  run: ({ db, studio, member, body, now }) => pinTurns(db, studio.id, member.id, body, now),
+  run: ({ db, studio, member, body, now }) => pinTurns(db, studio.id, member.id, body, now, () => useAsker().ask(db, 'pin', { studioId: studio.id, body }, now)),
 })

@@ -1,4 +1,4 @@
-import { bottleneck } from '~~/server/services/plan-questions'
+import { useAsker } from '~~/server/utils/asker'
 import { isRefusal } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { toWire } from '#shared/schemas/wire'
@@ -7,7 +7,7 @@ import { toWire } from '#shared/schemas/wire'
 export default defineStudioHandler({
   may: 'read the studio',
   run: async ({ db, studio, now }) => {
-    const found = await bottleneck(db, studio.id, now)
+    const found = await useAsker().ask(db, 'bottleneck', { studioId: studio.id }, now)
     return isRefusal(found) ? found : toWire(found)
   },
 })

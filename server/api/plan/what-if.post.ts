@@ -1,4 +1,4 @@
-import { askWhatIf } from '~~/server/services/plan-questions'
+import { useAsker } from '~~/server/utils/asker'
 import { isRefusal } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { whatIfBody } from '#shared/schemas/what-if'
@@ -9,7 +9,7 @@ export default defineStudioHandler({
   may: 'pin the plan',
   body: whatIfBody,
   run: async ({ db, studio, body, now }) => {
-    const found = await askWhatIf(db, studio.id, body, now)
+    const found = await useAsker().ask(db, 'what if', { studioId: studio.id, change: body }, now)
     return isRefusal(found) ? found : toWire(found)
   },
 })

@@ -1,5 +1,4 @@
-import { searchInWorker } from '~~/server/planning/search'
-import { promiseForNew } from '~~/server/services/promises'
+import { useAsker } from '~~/server/utils/asker'
 import { isRefusal } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { batchToCome } from '#shared/schemas/promise'
@@ -10,7 +9,7 @@ export default defineStudioHandler({
   may: 'promise dates',
   body: batchToCome,
   run: async ({ db, studio, member, body, now }) => {
-    const found = await promiseForNew(db, studio.id, member.id, body, now, searchInWorker)
+    const found = await useAsker().ask(db, 'date of new', { studioId: studio.id, request: body }, now, `date ${studio.id} ${member.id}`)
     return isRefusal(found) ? found : toWire(found)
   },
 })

@@ -2,8 +2,9 @@ import { and, eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
 import { pieceStep, pin, planEntry, turn } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
+import { searchHere } from '~~/server/planning/search'
 import { planState } from '~~/server/services/plan-state'
-import { pinTurns, unpin } from '~~/server/services/pins'
+import { checkPin, pinTurns, unpin } from '~~/server/services/pins'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
 
@@ -13,7 +14,10 @@ type Studio = ReturnType<typeof plannedStudio>
 
 const turnsOf = ({ db }: Studio, key: string) => db.select({ id: turn.id }).from(turn).innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).where(and(eq(pieceStep.key, key), eq(turn.kind, 'work'))).all().map(row => row.id)
 const startOf = ({ db }: Studio, turnId: number | undefined) => db.select().from(planEntry).where(eq(planEntry.turnId, turnId ?? 0)).get()?.startsAt ?? 0
-const pinAt = (studio: Studio, turnIds: number[], at: number, memberId: number | null = null, asked = now) => pinTurns(studio.db, studio.studioId, studio.members.maker.id, { turnIds, startsAt: new Date(at).toISOString(), memberId }, asked, atOnce)
+const pinAt = ({ db, studioId, members }: Pick<Studio, 'db' | 'studioId' | 'members'>, turnIds: number[], at: number, memberId: number | null = null, asked = now) => {
+  const body = { turnIds, startsAt: new Date(at).toISOString(), memberId }
+  return pinTurns(db, studioId, members.maker.id, body, asked, () => checkPin(db, studioId, body, asked, searchHere))
+}
 
 /** Two boxes, planned; the first paint of both lids is a session. */
 async function boxes() {
@@ -63,6 +67,6 @@ describe('pinning', () => {
 
   it('is absent for a turn of another studio', async () => {
     const studio = await boxes()
-    expect(await pinTurns(studio.db, studio.studioId + 1, 1, { turnIds: turnsOf(studio, 'lid-1'), startsAt: new Date(now + hour).toISOString(), memberId: null }, now, atOnce)).toMatchObject({ ok: false, reason: 'absent' })
+    expect(await pinAt({ ...studio, studioId: studio.studioId + 1 }, turnsOf(studio, 'lid-1'), now + hour)).toMatchObject({ ok: false, reason: 'absent' })
   })
 })

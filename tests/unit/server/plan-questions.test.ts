@@ -3,7 +3,7 @@ import { openHours, order, place, planEntry, reading, studio as studioTable } fr
 import { withOnePlace } from '~~/server/planning/bottleneck'
 import { changedProblem } from '~~/server/planning/changed-facts'
 import { baseOf, copyFrom } from '~~/server/planning/questions'
-import type { Asker } from '~~/server/planning/questions'
+import type { Ask } from '~~/server/planning/questions'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { solve } from '~~/server/planner/solve'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
@@ -16,7 +16,7 @@ import { hour, minute } from '../../helpers/studio'
 // A Tuesday.
 const now = Date.parse('2026-04-07T10:00:00Z')
 const clock = { now, zone: studioZone('UTC') }
-const ask: Asker = (_studio, problem) => Promise.resolve(solve(problem, { schedules: 120 }))
+const ask: Ask = problem => Promise.resolve(solve(problem, { schedules: 120 }))
 
 /** Six boards to be laminated on a bench with room for two at a time, each lying there under weight for a day, due in two days. */
 async function oneBench() {

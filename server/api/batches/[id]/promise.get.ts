@@ -1,5 +1,4 @@
-import { searchInWorker } from '~~/server/planning/search'
-import { promiseState } from '~~/server/services/promises'
+import { useAsker } from '~~/server/utils/asker'
 import { isRefusal } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { idParams } from '#shared/schemas/common'
@@ -10,7 +9,7 @@ export default defineStudioHandler({
   may: 'promise dates',
   params: idParams,
   run: async ({ db, studio, params, now }) => {
-    const state = await promiseState(db, studio.id, params.id, now, searchInWorker)
+    const state = await useAsker().ask(db, 'date', { studioId: studio.id, batchId: params.id }, now)
     return isRefusal(state) ? state : toWire(state)
   },
 })

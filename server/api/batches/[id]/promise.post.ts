@@ -1,5 +1,5 @@
-import { searchInWorker } from '~~/server/planning/search'
 import { makePromise } from '~~/server/services/promises'
+import { useAsker } from '~~/server/utils/asker'
 import { isRefusal } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { idParams } from '#shared/schemas/common'
@@ -12,7 +12,7 @@ export default defineStudioHandler({
   params: idParams,
   body: promiseRequest,
   run: async ({ db, studio, params, body, now }) => {
-    const state = await makePromise(db, studio.id, params.id, body, now, searchInWorker)
+    const state = await makePromise(db, studio.id, params.id, body, now, () => useAsker().ask(db, 'date', { studioId: studio.id, batchId: params.id }, now))
     return isRefusal(state) ? state : toWire(state)
   },
 })

@@ -1,7 +1,7 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
 import { cause, openHours, order, promise, promiseWatch, reminder } from '~~/db/schema'
-import { watchPromises } from '~~/server/planning/promise-watch'
+import { notePromise, reckonPromises } from '~~/server/planning/promise-watch'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { searchHere } from '~~/server/planning/search'
 import { tellingListener } from '~~/server/reminders/wanted'
@@ -32,7 +32,14 @@ const ask = async ({ db, studioId, batchId }: Studio, at = now) => {
   if ('ok' in state || !state.estimate) throw new Error('A batch that is planned has a date.')
   return { state, estimate: state.estimate }
 }
-const give = ({ db, studioId, batchId }: Studio, dateAt: number, orderName?: string) => makePromise(db, studioId, batchId, { dateAt: new Date(dateAt).toISOString(), orderName }, now, searchHere)
+const give = ({ db, studioId, batchId }: Studio, dateAt: number, orderName?: string) => makePromise(db, studioId, batchId, { dateAt: new Date(dateAt).toISOString(), orderName }, now, () => promiseState(db, studioId, batchId, now, searchHere))
+
+/** One look of the watch, written down; how many promises it looked at. */
+const look = async ({ db, studioId }: Pick<Studio, 'db' | 'studioId'>, at: number) => {
+  const reckoned = await reckonPromises(db, studioId, at, searchHere)
+  for (const each of reckoned) notePromise(db, studioId, each, at)
+  return reckoned.length
+}
 
 describe('a date for an order', () => {
   it('is never before the plan, likely before cautious, and the promise is the end of a working day', async () => {
@@ -60,9 +67,9 @@ describe('a date for an order', () => {
   })
 
   it('is told for a batch that nobody has started, and stores nothing', async () => {
-    const { db, studioId, members, places, scheduleOf } = await studioWith()
+    const { db, studioId, places, scheduleOf } = await studioWith()
     const before = db.$client.serialize()
-    const found = await promiseForNew(db, studioId, members.owner.id, { scheduleId: scheduleOf('oiled-bowl') ?? 0, pieces: 2, sizeUnits: 1, placeId: places.shelf, startsAt: new Date(now).toISOString(), dueAt: null }, now, searchHere)
+    const found = await promiseForNew(db, studioId, { scheduleId: scheduleOf('oiled-bowl') ?? 0, pieces: 2, sizeUnits: 1, placeId: places.shelf, startsAt: new Date(now).toISOString(), dueAt: null }, now, searchHere)
     if ('ok' in found) throw new Error(found.message)
     expect(found.cautiousAt).toBeGreaterThan(now)
     expect(db.$client.serialize().equals(before)).toBe(true)
@@ -84,7 +91,7 @@ describe('a promise', () => {
     const studio = await studioWith(null)
     expect(await give(studio, now - day)).toMatchObject({ reason: 'malformed', fields: { dateAt: 'That day is over. Promise a day that is still to come.' } })
     expect(await give(studio, now + day)).toMatchObject({ reason: 'malformed', fields: { orderName: 'This batch belongs to no order. Give the order a name: a promise is made to somebody.' } })
-    expect(await makePromise(studio.db, studio.studioId + 1, studio.batchId, { dateAt: new Date(now + day).toISOString() }, now, searchHere)).toMatchObject({ reason: 'absent' })
+    expect(await makePromise(studio.db, studio.studioId + 1, studio.batchId, { dateAt: new Date(now + day).toISOString() }, now, () => promiseState(studio.db, studio.studioId, studio.batchId, now, searchHere))).toMatchObject({ reason: 'absent' })
     expect(studio.db.select().from(promise).all()).toEqual([])
     expect(await give(studio, now + 9 * day, 'Harbour fair')).toMatchObject({ order: 'Harbour fair', standing: { promisedAt: now + 9 * day } })
   })
@@ -95,7 +102,7 @@ describe('a promise', () => {
     const { estimate } = await ask(studio)
     const watch = async (at: number) => {
       await replan(db, studioId, at, atOnce)
-      await watchPromises(db, studioId, at, searchHere)
+      await look(studio, at)
       tellingListener(db, studioId, at)
       return db.select({ key: cause.groupKey, status: reminder.status, body: reminder.body }).from(reminder).innerJoin(cause, eq(cause.id, reminder.causeId)).where(eq(cause.kind, 'promise slipping')).all()
     }
@@ -120,10 +127,10 @@ describe('a promise', () => {
     const studio = await studioWith()
     const { db, studioId } = studio
     await give(studio, now + 30 * day)
-    expect(await watchPromises(db, studioId, now + minute, searchHere)).toBe(1)
-    expect(await watchPromises(db, studioId, now + 30 * minute, searchHere)).toBe(0)
+    expect(await look(studio, now + minute)).toBe(1)
+    expect(await look(studio, now + 30 * minute)).toBe(0)
     await replan(db, studioId, now + 5 * minute, atOnce)
-    expect(await watchPromises(db, studioId, now + 10 * minute, searchHere)).toBe(0)
-    expect(await watchPromises(db, studioId, now + 17 * minute, searchHere)).toBe(1)
+    expect(await look(studio, now + 10 * minute)).toBe(0)
+    expect(await look(studio, now + 17 * minute)).toBe(1)
   })
 })

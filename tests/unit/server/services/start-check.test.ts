@@ -30,7 +30,7 @@ function studioOfOne() {
   }
   without(scheduleId, key => key === 'tape')
   const check = async (pieces: number, at = now) => {
-    const found = await checkStart(db, studioId, studio.members.maker.id, { scheduleId, pieces, sizeUnits: 1, placeId: studio.places.shelf, startsAt: new Date(at).toISOString(), dueAt: null }, at, searchHere)
+    const found = await checkStart(db, studioId, { scheduleId, pieces, sizeUnits: 1, placeId: studio.places.shelf, startsAt: new Date(at).toISOString(), dueAt: null }, at, searchHere)
     if ('ok' in found) throw new Error(found.message)
     return new Map(found.plans.map((each): [StartPlan['start'], StartPlan] => [each.start, each]))
   }
