@@ -1,5 +1,7 @@
 import type { Driver, MilestoneName } from '#shared/terms'
 import type { CautionKey } from '#shared/library/cautions'
+import { handTests } from '#shared/library/hand-tests'
+import { requiredCautions } from '#shared/library/required-cautions'
 import { figureUnits } from '#shared/library/types'
 import type { FigureName, LibraryFigure, LibraryMaterial, LibraryMilestone, LibraryWindow, MaterialKind, Solvent, Sourced } from '#shared/library/types'
 
@@ -15,20 +17,6 @@ export const tradePage = (material: string): Sourced => ({ source: `trade page, 
 export const practice: Sourced = { source: 'common practice', key: 'CP' }
 export const memory: Sourced = { source: 'from memory: check the data sheet', key: 'M' }
 export const planning: Sourced = { source: 'planning value', key: 'planning value' }
-
-const handTests: Record<MilestoneName, string | null> = {
-  'set-to-touch': 'A light fingertip at an edge comes away clean.',
-  'dust-free': 'A fibre dropped on it can be blown off.',
-  'tack-free': 'A tissue pressed on it leaves no fibres.',
-  'at-tack': 'A knuckle drawn across it squeaks and comes away clean.',
-  'dry-to-handle': 'A thumb pressed and turned a quarter leaves no mark.',
-  'dry-to-sand-lightly': 'Fine paper lifts dry powder and does not clog.',
-  'dry-to-sand-flat': 'Paper on a block lifts dry powder all over and does not clog.',
-  'ready-to-recoat': 'It is no longer cool to the back of the hand.',
-  'out-of-clamps': 'The line of squeezed-out glue is firm under a fingernail.',
-  'full-strength': null,
-  'cured': 'It has no smell, and a fingernail leaves no dent at an edge.',
-}
 
 /** A rung in minutes. Without `handTest` it takes the trade's usual one for that milestone. */
 export function rung(name: MilestoneName, driver: Driver, [low, typical, high]: Span, from: Sourced, handTest?: string | null): LibraryMilestone {
@@ -69,15 +57,10 @@ interface MaterialSpec {
   cautions?: readonly CautionKey[]
 }
 
-/** Written once here, so that no material of a kind can be without the cautions of its kind. */
+/** No material of a kind can be without the cautions of its kind. */
 function kindCautions(spec: MaterialSpec): CautionKey[] {
-  const found: CautionKey[] = []
-  if (spec.solvent !== 'water' && spec.solvent !== 'none') found.push('vapour', 'flames', 'fan', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can')
-  if (spec.solvent === 'alcohol' || spec.solvent === 'lacquer thinner') found.push('pouring')
-  if (spec.dryingOil) found.push('oily rags', 'waste can', 'sleeping room', 'airing')
-  if (spec.isocyanate) found.push('isocyanate')
-  if (spec.glovesUntil) found.push('gloves')
-  return found
+  const held = [...spec.dryingOil ? ['drying oil' as const] : [], ...spec.isocyanate ? ['isocyanate' as const] : []]
+  return requiredCautions({ solvent: spec.solvent, contents: held, gloves: spec.glovesUntil !== undefined })
 }
 
 const limitFigures = {
