@@ -104,3 +104,7 @@ export const deliveryStatuses = ['queued', 'sending', 'accepted', 'unknown', 'go
 export const planStatuses = ['optimal', 'feasible', 'infeasible'] as const
 export const sourceKeys = ['S', 'S-', 'M', 'CP', 'calc', 'planning value', 'own'] as const
 export type SourceKey = typeof sourceKeys[number]
+
+/** What the parts of a mix are measured by. */
+export const mixBases = ['weight', 'volume'] as const
+export type MixBasis = typeof mixBases[number]

@@ -2,8 +2,8 @@ import { sql } from 'drizzle-orm'
 import { check, integer, primaryKey, real, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
 import { studioColumn } from './studio'
-import { drivers, milestoneNames, sourceKeys } from '#shared/terms'
-import type { Driver, MilestoneName, SourceKey } from '#shared/terms'
+import { drivers, milestoneNames, mixBases, sourceKeys } from '#shared/terms'
+import type { Driver, MilestoneName, MixBasis, SourceKey } from '#shared/terms'
 
 export const material = sqliteTable('material', {
   id: id(),
@@ -88,12 +88,14 @@ export const tin = sqliteTable('tin', {
   openedAt: instant('opened_at').notNull(),
 }, t => [studioKey(t), within(t, t.materialId, material)])
 
-/** A material made of parts; its own ladder lives in its versions like any other. */
+/** What one edition of a material is mixed from; its ladder lies in that edition like any other. A coat names the mix it was poured from. */
 export const mix = sqliteTable('mix', {
   id: id(),
   studioId: studioColumn(),
-  materialId: integer('material_id').notNull().unique(),
-}, t => [studioKey(t), within(t, t.materialId, material)])
+  materialId: integer('material_id').notNull(),
+  versionId: integer('version_id').notNull().unique(),
+  basis: text('basis').$type<MixBasis>().notNull().default('volume'),
+}, t => [studioKey(t), within(t, t.materialId, material), within(t, t.versionId, materialVersion), oneOf('mix_basis', t.basis, mixBases)])
 
 export const mixPart = sqliteTable('mix_part', {
   studioId: studioColumn(),

@@ -12,6 +12,7 @@ import { absent, conflict, impossible, isRefusal, malformed, notAllowed } from '
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
 import { afterAct } from '~~/server/work/consequences'
+import { editionOfStep } from '~~/server/work/newest-editions'
 import { insertAct, spreadAlong } from '~~/server/work/record'
 import type { Acting } from '~~/server/work/record'
 import { refold } from '~~/server/work/refold'
@@ -43,9 +44,10 @@ type PieceRow = typeof piece.$inferSelect
 export function recordAct(db: Database, studioId: number, teller: Teller, request: ActRequest, now: number): Recorded | Refusal {
   const before = db.select({ id: act.id }).from(act).where(scoped(act, studioId, eq(act.clientKey, request.clientKey))).get()
   if (before) return { ok: true, actId: before.id, repeated: true }
-  const body = parseActBody(request.kind, request.body)
-  if (isRefusal(body)) return body
+  const told = parseActBody(request.kind, request.body)
+  if (isRefusal(told)) return told
   return change<Recorded | Refusal>(db, studioId, 'work', (tx): Recorded | Refusal => {
+    const body = withEdition(tx, studioId, request, told)
     const pieces = findPieces(tx, studioId, request.pieces.map(each => each.id))
     const refusal = pieces.length < request.pieces.length ? absent(actRefusals.noPiece) : findRefusal(tx, studioId, teller, request, body, pieces, now)
     if (refusal) return refusal
@@ -67,6 +69,13 @@ export function recordAct(db: Database, studioId: number, teller: Teller, reques
 export function parseActBody(kind: TellableKind, body: unknown): Record<string, unknown> | Refusal {
   const result = actBodies[kind].safeParse(body)
   return result.success ? { ...result.data } : malformed(describeIssues(result.error.issues))
+}
+
+/** A film put on by a step whose figures have changed since its batch began names the edition it is put on with. */
+function withEdition(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>): Record<string, unknown> {
+  if (!laying.includes(request.kind) || typeof body.step !== 'string' || typeof body.materialVersionId === 'number') return body
+  const materialVersionId = editionOfStep(tx, studioId, request.pieces.map(each => each.id), body.step)
+  return materialVersionId === null ? body : { ...body, materialVersionId }
 }
 
 export const actingOf = (teller: Teller): Acting => ('member' in teller ? { actor: 'member', memberId: teller.member.id } : { actor: 'bench', memberId: null })
@@ -102,6 +111,7 @@ export function checkTime(doneAt: number, now: number): Refusal | null {
   return null
 }
 
+const laying: readonly TellableKind[] = ['coat on', 'glue-up on']
 const benchKinds: readonly TellableKind[] = ['coat on', 'touch test', 'moved', 'it is out', 'seen']
 const workKinds: readonly TellableKind[] = ['began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'enough']
 const makerKinds: readonly TellableKind[] = ['stripped', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'gone', 'back', 'regrouped', 'cancelled', 'intake answered', 'air']

@@ -1,4 +1,4 @@
-import { and, asc, desc, eq } from 'drizzle-orm'
+import { and, asc, desc, eq, inArray } from 'drizzle-orm'
 import { audit, benchSpeed, coat, material, materialFigure, materialVersion, room, studio, tin, touchTest } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
@@ -10,6 +10,7 @@ import { roomAirs } from '~~/server/work/air'
 import { benchState } from '~~/server/work/benches'
 import type { KeptTest } from '~~/server/work/benches'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
+import { editionsInUse } from '~~/server/work/newest-editions'
 import { predictPieces } from '~~/server/work/predict'
 import { airAt } from '#shared/air/room'
 import { learnBench } from '#shared/drying/learn'
@@ -80,7 +81,7 @@ function rungWire(sheet: PreparedRung, bench: PreparedRung | null, tests: readon
 /** Of the tests made at or after the give-it-till that stood when they were made, how many still said "not yet". */
 function coverageOf(db: Database, studioId: number, versionId: number, since: number): LearnedWire['coverage'] {
   const rows = db.select({ at: touchTest.at, reached: touchTest.reached, forecast: touchTest.forecast }).from(touchTest).innerJoin(coat, eq(coat.id, touchTest.coatId))
-    .where(scoped(touchTest, studioId, eq(coat.materialVersionId, versionId), eq(coat.forced, false))).orderBy(asc(touchTest.id)).all()
+    .where(scoped(touchTest, studioId, inArray(coat.materialVersionId, editionsInUse(db, studioId).fellowsOf(versionId)), eq(coat.forced, false))).orderBy(asc(touchTest.id)).all()
   const late = rows.filter(({ at, forecast }) => at > since && forecast?.p90At !== null && forecast?.p90At !== undefined && at >= forecast.p90At)
   return { early: late.filter(row => !row.reached).length, of: late.length }
 }

@@ -1,5 +1,5 @@
 import { asc, inArray } from 'drizzle-orm'
-import { materialFigure, materialVersion, milestone, recoatWindow } from '~~/db/schema'
+import { materialFigure, materialVersion, milestone, mix, recoatWindow } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { prepareMaterial } from '#shared/drying/material'
@@ -17,12 +17,14 @@ export function dryingMaterials(db: Database | Transaction, studioId: number, ve
   const windows = db.select().from(recoatWindow).where(scoped(recoatWindow, studioId, inArray(recoatWindow.versionId, ids))).orderBy(asc(recoatWindow.ordinal)).all()
   const figures = db.select().from(materialFigure).where(scoped(materialFigure, studioId, inArray(materialFigure.versionId, ids))).all()
   const solvents = new Map(db.select({ id: materialVersion.id, solvent: materialVersion.solvent }).from(materialVersion).where(scoped(materialVersion, studioId, inArray(materialVersion.id, ids))).all().map(each => [each.id, each.solvent]))
+  const mixed = new Set(db.select({ id: mix.versionId }).from(mix).where(scoped(mix, studioId, inArray(mix.versionId, ids))).all().map(each => each.id))
   return new Map(ids.map((id) => {
     const figure = (name: string) => figures.find(each => each.versionId === id && each.name === name)?.typical ?? null
     return [id, {
       reference: { tempC: figure('reference temperature') ?? 20, rh: figure('reference humidity') ?? 0.5 },
       minTempC: figure('minimum temperature'), maxRh: figure('humidity ceiling'), dryAirFloor: figure('dry-air floor'), thicknessExponent: figure('thickness exponent') ?? undefined,
       blushes: hazes(solvents.get(id) ?? ''),
+      ...mixed.has(id) ? { mixed: true } : {},
       milestones: rungs.filter(each => each.versionId === id).map(({ name, driver, low, typical, high }) => ({ name, driver, low, typical, high })),
       windows: windows.filter(each => each.versionId === id).map(({ fromMin, toMin }) => [fromMin, toMin] as const),
     }]

@@ -3,6 +3,7 @@ import { batch, face, part, piece } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { actsOn } from '~~/server/work/acts'
+import { editionsInUse, mayStillLay } from '~~/server/work/newest-editions'
 import { readEdition } from '~~/server/work/schedule'
 import type { ScheduleEdition } from '~~/server/work/schedule'
 import { seedOf } from '~~/server/work/seed'
@@ -20,13 +21,14 @@ export function foldPieces(db: Database | Transaction, studioId: number, pieceId
   const faces = db.select().from(face).where(scoped(face, studioId, inArray(face.partId, parts.map(each => each.id)))).orderBy(asc(face.id)).all()
   const acts = actsOn(db, studioId, parts.map(each => each.id))
   const editions = new Map<number, ScheduleEdition>()
+  const { newestOf } = editionsInUse(db, studioId)
   return pieces.map(({ piece: row, versionId }) => {
     const own = parts.filter(each => each.pieceId === row.id)
     const seedParts = own.map(each => ({ id: each.id, key: each.key, name: each.name, faces: faces.filter(one => one.partId === each.id).map(one => ({ id: one.id, key: one.key })) }))
     const mine = actsWith(acts, new Set(own.map(each => each.id)))
     if (versionId !== null && !editions.has(versionId)) editions.set(versionId, readEdition(db, studioId, versionId))
     const seed = seedOf(seedParts, versionId === null ? null : editions.get(versionId) ?? null, startMaterials(mine))
-    return { piece: row, parts: seedParts, acts: mine, folded: fold(seed, mine) }
+    return { piece: row, parts: seedParts, acts: mine, folded: inNewestEditions(fold(seed, mine), newestOf) }
   })
 }
 
@@ -35,6 +37,12 @@ export function refold(tx: Transaction, studioId: number, pieceIds: readonly num
   const folded = foldPieces(tx, studioId, pieceIds)
   for (const each of folded) storeFold(tx, studioId, each)
   return folded
+}
+
+/** What is still to be put on is put on by the newest figures; a coat that lies keeps those it was put on with. */
+function inNewestEditions(folded: Folded, newestOf: (versionId: number) => number): Folded {
+  const steps = folded.steps.map(step => step.materialVersionId !== null && mayStillLay(step.status) ? { ...step, materialVersionId: newestOf(step.materialVersionId) } : step)
+  return { ...folded, steps }
 }
 
 function actsWith(acts: readonly WorkAct[], partIds: ReadonlySet<number>): WorkAct[] {

@@ -7,6 +7,7 @@ import { benchState } from '~~/server/work/benches'
 import type { KeptTest } from '~~/server/work/benches'
 import { caseOf, clocks, readFacts, spansOf } from '~~/server/work/film-cases'
 import type { CoatRow } from '~~/server/work/film-cases'
+import { editionsInUse } from '~~/server/work/newest-editions'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { benchTests, weightOf } from '#shared/drying/bench-tests'
 
@@ -26,14 +27,16 @@ export function relearn(tx: Transaction, studioId: number, pieceIds: readonly nu
   // A coat that was taken back has no row any more: with the whole studio its edition is found by what it had taught.
   const taught = tx.selectDistinct({ id: benchSpeed.materialVersionId }).from(benchSpeed).leftJoin(coat, eq(coat.materialVersionId, benchSpeed.materialVersionId))
     .where(and(scoped(benchSpeed, studioId), pieceIds ? inArray(coat.pieceId, [...pieceIds]) : undefined)).all()
-  const ids = [...new Set([...versions, ...taught].flatMap(row => row.id ?? []))]
+  // A test teaches every edition of its material: it is the same tin, read off another sheet.
+  const { fellowsOf } = editionsInUse(tx, studioId)
+  const ids = [...new Set([...versions, ...taught].flatMap(row => row.id === null ? [] : fellowsOf(row.id)))]
   return ids.filter(id => relearnOne(tx, studioId, id, now))
 }
 
 function relearnOne(tx: Transaction, studioId: number, versionId: number, now: number): boolean {
   const known = tx.select().from(benchSpeed).where(scoped(benchSpeed, studioId, eq(benchSpeed.materialVersionId, versionId))).get()
   const rows = tx.select({ test: touchTest, coat }).from(touchTest).innerJoin(coat, eq(coat.id, touchTest.coatId))
-    .where(and(scoped(touchTest, studioId, eq(coat.materialVersionId, versionId)), known?.resetAt ? gt(touchTest.at, known.resetAt) : undefined)).orderBy(asc(touchTest.id)).all()
+    .where(and(scoped(touchTest, studioId, inArray(coat.materialVersionId, editionsInUse(tx, studioId).fellowsOf(versionId))), known?.resetAt ? gt(touchTest.at, known.resetAt) : undefined)).orderBy(asc(touchTest.id)).all()
   const weights = weightsOf(tx, studioId, versionId, rows, now)
   const lines = rows.map((row, i) => `${lineOf(row)} ${weights[i]!.toFixed(2)}`)
   const signature = lines.join(';')
