@@ -6,9 +6,14 @@ const aNight = 12 * 60
 /** A window in which hands were never at work. Minutes on the walk's own axis. */
 export interface MissedWindow { step: string, after: string, opens: number, shuts: number }
 
+/** The ends of a step: of its work, of all that hands still have to do about it, and of its film's drying to the touch of hands. */
+export interface WalkEnd { work: number, free: number, last: number }
+
 export interface Walk {
   /** When each step's work begins; a step that no end of waiting leads to is missing. */
   starts: Map<string, number>
+  /** When each of them ends; missing where a wait has no end. */
+  ends: Map<string, WalkEnd>
   /** The end of the last work and of the last film's drying to the touch of hands; null when some wait has no end. */
   end: number | null
   /** Windows that meet no open hours, the earliest first. */
@@ -16,7 +21,6 @@ export interface Walk {
 }
 
 interface Asked { by: 'likelyMin' | 'giveTillMin', pieces: number, start: number, opens: (minute: number) => number }
-interface Ended { work: number, free: number, last: number }
 
 /**
  * Walks a schedule through once with nothing in the way but its own waits and, if asked, the hours: no clamps taken, no
@@ -26,12 +30,14 @@ interface Ended { work: number, free: number, last: number }
  * at or after a minute at which hands may begin (the same minute where work goes round the clock)
  */
 export function walkSchedule(schedule: { steps: readonly ScheduleStepWire[], links: readonly ScheduleLinkWire[] }, asked: Asked): Walk {
-  const walk: Walk = { starts: new Map(), end: null, missed: [] }
-  const ended = new Map<string, Ended | null>()
+  const walk: Walk = { starts: new Map(), ends: new Map(), end: null, missed: [] }
+  const ended = new Map<string, WalkEnd | null>()
   for (const step of inGraphOrder(schedule.steps, schedule.links)) {
     const start = startOf(step, schedule.links.filter(link => link.to === step.key), ended, asked, walk)
     if (start !== null) walk.starts.set(step.key, start)
-    ended.set(step.key, start === null ? null : endOf(step, start, asked))
+    const end = start === null ? null : endOf(step, start, asked)
+    ended.set(step.key, end)
+    if (end) walk.ends.set(step.key, end)
   }
   const ends = [...ended.values()]
   if (ends.length > 0 && ends.every(each => each !== null)) walk.end = Math.max(...ends.map(each => each.last))
@@ -54,7 +60,7 @@ export function inGraphOrder<Step extends { key: string }>(steps: readonly Step[
   return [...ordered, ...steps.filter(step => !placed.has(step.key))]
 }
 
-function startOf(step: ScheduleStepWire, links: readonly ScheduleLinkWire[], ended: ReadonlyMap<string, Ended | null>, asked: Asked, walk: Walk): number | null {
+function startOf(step: ScheduleStepWire, links: readonly ScheduleLinkWire[], ended: ReadonlyMap<string, WalkEnd | null>, asked: Asked, walk: Walk): number | null {
   let earliest = asked.start
   for (const link of links) {
     const before = ended.get(link.from)
@@ -79,7 +85,7 @@ function insideWindow(earliest: number, step: ScheduleStepWire, link: ScheduleLi
   return asked.opens(Math.max(earliest, end + wait, end + shut))
 }
 
-function endOf(step: ScheduleStepWire, start: number, { by, pieces, opens }: Asked): Ended | null {
+function endOf(step: ScheduleStepWire, start: number, { by, pieces, opens }: Asked): WalkEnd | null {
   const minutes = step.setupMin + step.pieceMin * pieces + step.cleanMin
   let work = start + minutes
   for (let turn = 1; turn < step.perDay * step.days; turn++) {

@@ -1,8 +1,8 @@
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId } from '~~/server/planning/lags'
 import type { LagInput, StepWork } from '~~/server/planning/lags'
-import { minutesFrom, reachedAt, rungFor } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
+import { minutesFrom, reachedAt, rungFor } from '#shared/drying/waits'
 import type { PlanInput } from '#shared/planning/problem'
 
 /** Much dust settles for half an hour before a film may lie in the same room (planning value). */

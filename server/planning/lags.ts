@@ -1,6 +1,6 @@
-import { metAt, minutesFrom } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import type { PlanFacts } from '~~/server/planning/facts'
+import { metAt, minutesFrom } from '#shared/drying/waits'
 import type { PlanInput } from '#shared/planning/problem'
 import type { LagWindow, Recovery } from '#shared/planning/types'
 import type { MilestoneName, Risk } from '#shared/terms'

@@ -1,7 +1,7 @@
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { StudioProblem } from '~~/server/planning/problem'
 import { handsOf } from '~~/server/planning/hands'
-import { minutesFrom } from '~~/server/planning/waits'
+import { minutesFrom } from '#shared/drying/waits'
 import { lastStart } from '#shared/planning/lastStart'
 import type { LastStart } from '#shared/planning/lastStart'
 import type { Interval, Plan } from '#shared/planning/types'

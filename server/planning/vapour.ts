@@ -4,12 +4,12 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import type { Hands } from '~~/server/planning/hands'
 import { activityId } from '~~/server/planning/lags'
 import type { LagInput, StepWork } from '~~/server/planning/lags'
-import { minutesFrom } from '~~/server/planning/waits'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { openStarts } from '~~/server/services/vapour-facts'
 import { notClearBefore, readVapour } from '~~/server/services/vapour-rooms'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { minutesFrom } from '#shared/drying/waits'
 import type { PlanInput } from '#shared/planning/problem'
 
 /** A room that nobody enters: who opens it, who may go on in it with the exhaust running, and the floor under its opening (ms UTC, null when it cannot be told). */

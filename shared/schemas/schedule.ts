@@ -1,3 +1,6 @@
+import type { Air, DryingMaterial } from '#shared/drying/types'
+import type { ScheduleDraft } from '#shared/schemas/schedule-draft'
+import type { ScheduleChange } from '#shared/schedules/changes'
 import type { Hold, MilestoneName, Risk, StepKind } from '#shared/terms'
 import type { StepLabour } from '#shared/work/types'
 
@@ -55,3 +58,39 @@ export interface ScheduleWire {
 
 /** GET /api/schedules/7: the same with its steps and what each waits for. */
 export interface ScheduleDetailWire extends ScheduleWire { steps: ScheduleStepWire[], links: ScheduleLinkWire[] }
+
+/** A material as the editor needs it: enough to reckon a film in the browser. `recoveries` stand beside its windows, null where the sheet asks for none. */
+export interface ScheduleMaterialWire {
+  id: number
+  name: string
+  kind: string
+  glue: boolean
+  solventBorne: boolean
+  drying: DryingMaterial
+  recoveries: ({ name: string, minutes: number } | null)[]
+  cautions: string[]
+}
+
+/** What is known of one material over another, both by number: the shortest wait in minutes at the sheet's climate; null: never. */
+export interface SystemRuleWire { under: number[], over: number[], minMin: number | null, text: string }
+
+/** GET /api/schedules/materials: what can be laid, the rules between them, and the air all times are reckoned in. */
+export interface ScheduleMaterialsWire { materials: ScheduleMaterialWire[], rules: SystemRuleWire[], usual: Air, zone: string }
+
+/** GET /api/schedules/[id]/draft: an edition to edit. `no` is the newest there is, `of` the one that was read; `pieces` keep an older one. */
+export interface ScheduleDraftWire { id: number, no: number, of: number, draft: ScheduleDraft, fromLibrary: boolean }
+
+/** What a second editor finds: the edition that came between, and who made it. */
+export interface ScheduleConflictWire { no: number, by: string | null, draft: ScheduleDraft }
+
+/** POST and PUT /api/schedules: the schedule and its new edition. */
+export interface ScheduleSavedWire { id: number, no: number }
+
+/** A schedule that could be kept: the piece to take it from, and how often it was done alike. */
+export interface ScheduleOfferWire { pieceId: number, pieceName: string, times: number, steps: number }
+
+/** GET /api/schedules/[id]/versions: one edition. `madeAt` ms UTC, ISO 8601 on the wire; `pieces` were started with it. */
+export interface ScheduleVersionWire { no: number, madeAt: number | null, by: string | null, pieces: number, changes: ScheduleChange[], fromLibrary: boolean }
+
+/** GET /api/schedules/put-away */
+export interface PutAwayWire { id: number, name: string }

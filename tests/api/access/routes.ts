@@ -23,6 +23,15 @@ const clientKey = () => `access-key-${keys += 1}`
 
 const place = (rows: Rows) => ({ roomId: rows.room, name: 'Rail', kind: 'rail', capacity: 4, sort: 1 })
 
+/** A schedule of one coat, which only the studio of its material can keep. */
+const washDraft = (materialId: number) => ({
+  name: `Wash ${keys += 1}`, summary: '', parts: [{ key: 'piece', name: 'Piece', grip: null, faces: [] }], links: [],
+  steps: [{
+    key: 'wash', name: 'Wash', kind: 'coat', materialId, coatSize: 'normal', ground: 'primed', hold: null, placeKind: null, perDay: 1, days: 1, untilEnough: false,
+    setupMin: 5, pieceMin: 5, cleanMin: 5, releaseMin: 0, hands: 1, dust: 'none', mayRunOver: false, targets: [{ part: 'piece', face: null }], checks: [],
+  }],
+})
+
 /** Every file under server/api, by its path. A new route is added here or the suite fails. */
 export const routes: Record<string, RouteCase> = {
   // Doors: they ask who one is and touch no studio's rows.
@@ -110,6 +119,17 @@ export const routes: Record<string, RouteCase> = {
   'pieces/[id].get.ts': { least: 'helper', apart: 'row', at: 'piece' },
   'schedules/index.get.ts': { least: 'helper', apart: 'view' },
   'schedules/[id].get.ts': { least: 'helper', apart: 'row', at: 'schedule' },
+  'schedules/[id]/versions.get.ts': { least: 'helper', apart: 'row', at: 'schedule' },
+  'schedules/[id]/draft.get.ts': { least: 'maker', apart: 'row', at: 'schedule' },
+  'schedules/materials.get.ts': { least: 'maker', apart: 'view' },
+  'schedules/offers.get.ts': { least: 'maker', apart: 'view' },
+  'schedules/put-away.get.ts': { least: 'maker', apart: 'view' },
+  'schedules/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ draft: washDraft(rows.material) }) },
+  // Nobody's newest edition is the ninetieth: who may is told what stands there now.
+  'schedules/[id].put.ts': { least: 'maker', apart: 'row', at: 'schedule', body: rows => ({ baseNo: 90, draft: washDraft(rows.material) }) },
+  'schedules/[id].patch.ts': { least: 'maker', apart: 'row', at: 'schedule', body: () => ({ archived: false }) },
+  // Nothing was done to the first studio's piece that a schedule could be made of.
+  'pieces/[id]/schedule-draft.get.ts': { least: 'maker', apart: 'row', at: 'piece' },
   'state.get.ts': { least: 'wall', apart: 'view' },
   'batches/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ clientKey: clientKey(), name: 'Boxes', scheduleId: null, pieces: ['Box 1'], placeId: rows.place, order: null, startsAt: recently() }) },
   // Its shelf is another studio's: told as a field that is wrong.

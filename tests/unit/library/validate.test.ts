@@ -21,22 +21,22 @@ describe('what is wrong with a schedule', () => {
   it('is nothing when it is right', () => expect(problems({})).toEqual([]))
 
   it('names an unknown material, part, face and milestone', () => {
-    expect(problems({ steps: [{ ...a, material: 'cheese' }, b, c, d] })).toContain('step "a" asks for the material "cheese", which is not there')
-    expect(problems({ steps: [a, { ...b, targets: [{ part: 'lid' }] }, c, d] })).toContain('step "b" names the part "lid", which is not there')
-    expect(problems({ steps: [a, { ...b, targets: [{ part: 'panel', face: 'rim' }] }, c, d] })).toContain('step "b" names the face "rim", which panel has not')
-    expect(problems({ links: [recoatable('a', 'b', 'out-of-clamps'), done('b', 'c'), done('c', 'd')] })).toContain('link a -> b: acrylic-gesso has no "out-of-clamps"')
+    expect(problems({ steps: [{ ...a, material: 'cheese' }, b, c, d] })).toContain('“A” asks for a material that the studio has not got.')
+    expect(problems({ steps: [a, { ...b, targets: [{ part: 'lid' }] }, c, d] })).toContain('“B” names a part that is not there: lid.')
+    expect(problems({ steps: [a, { ...b, targets: [{ part: 'panel', face: 'rim' }] }, c, d] })).toContain('“B” names a face that no part has: rim.')
+    expect(problems({ links: [recoatable('a', 'b', 'out-of-clamps'), done('b', 'c'), done('c', 'd')] })).toContain('“B” waits until “A” is out of clamps, which its material never is.')
   })
 
   it('names a window the material has not, and a milestone after bench work', () => {
-    expect(problems({ links: [inWindow('a', 'b'), done('b', 'c'), done('c', 'd')] })).toContain('link a -> b: acrylic-gesso has no window')
-    expect(problems({ links: [done('a', 'b'), recoatable('b', 'c'), done('c', 'd')] })).toContain('link b -> c: no material has no "ready-to-recoat"')
+    expect(problems({ links: [inWindow('a', 'b'), done('b', 'c'), done('c', 'd')] })).toContain('“B” waits for a window after “A”, but Acrylic gesso has none.')
+    expect(problems({ links: [done('a', 'b'), recoatable('b', 'c'), done('c', 'd')] })).toContain('“C” waits for a film, but “B” leaves none.')
   })
 
   it('names steps that wait for each other, steps apart and steps in no order', () => {
-    expect(problems({ links: [...plain.links, done('d', 'a')] })).toContain('some steps wait for each other')
-    expect(problems({ links: [done('a', 'b'), done('c', 'd')] })).toContain('step "c" is not linked to the rest')
-    expect(problems({ links: [done('a', 'b'), done('a', 'c'), done('c', 'd')] })).toContain('steps "b" and "c" are on the same part in no order')
-    expect(problems({ links: [done('a', 'z')] })).toContain('link a -> z: a step is not there')
+    expect(problems({ links: [...plain.links, done('d', 'a')] })).toContain('These wait for each other in a circle: “A”, “B”, “C”, “D”.')
+    expect(problems({ links: [done('a', 'b'), done('c', 'd')] })).toContain('“C” leads nowhere: nothing waits for it and it waits for nothing of the rest.')
+    expect(problems({ links: [done('a', 'b'), done('a', 'c'), done('c', 'd')] })).toContain('“B” and “C” are on the same face, and nothing says which comes first.')
+    expect(problems({ links: [done('a', 'z')] })).toContain('A wait names a step that is not there: z.')
   })
 
   it('names parts that go nowhere or into themselves', () => {
@@ -45,10 +45,10 @@ describe('what is wrong with a schedule', () => {
   })
 
   it('names a glue-up of one part, a clamp nobody opens, and what is there twice', () => {
-    expect(problems({ steps: [a, b, c, { ...d, targets: [{ part: 'panel' }] }] })).toContain('step "d" joins fewer than two parts, or a face')
-    expect(problems({ steps: [a, b, c, { ...d, releaseMin: 0 }] })).toContain('step "d" is held and nobody takes it out')
-    expect(problems({ steps: [a, a, b, c, d] })).toContain('step "a" is there twice')
-    expect(problems({ steps: [] })).toContain('there is no step')
+    expect(problems({ steps: [a, b, c, { ...d, targets: [{ part: 'panel' }] }] })).toContain('“D” joins fewer than two parts. Choose what is glued to what.')
+    expect(problems({ steps: [a, b, c, { ...d, releaseMin: 0 }] })).toContain('“D” is held and nobody takes it out. Give the minutes for taking it out.')
+    expect(problems({ steps: [a, a, b, c, d] })).toContain('The key a is there twice.')
+    expect(problems({ steps: [] })).toContain('There is no step yet. Add the first.')
   })
 })
 
