@@ -21,7 +21,7 @@ const pieces = 60
 const barMs = 2000
 
 /** The demo studio, filled up to sixty pieces with batches of the library's schedules. */
-async function fill(db: Database): Promise<void> {
+export async function fill(db: Database): Promise<void> {
   migrate(db, { migrationsFolder: join(root, 'db/migrations') })
   await seedDemo(db, now)
   const maker = db.select({ id: member.id, role: member.role }).from(member).all().find(each => each.role === 'owner')!

@@ -14,8 +14,8 @@ import type { Luck } from '#shared/promise/types'
 /** A plan of a copy of a studio, and the ways it may go. */
 export interface Estimated { given: StudioProblem, plan: Plan, outcome: Outcome }
 
-/** What is asked of an estimate besides: how long to search, and which scenarios to draw. */
-export interface EstimateOptions extends SearchLimits, SimulateOptions { key: string }
+/** What is asked of an estimate besides: of which batches, how long to search, and which scenarios to draw. */
+export interface EstimateOptions extends SearchLimits, Omit<SimulateOptions, 'jobs'> { key: string, batchIds: readonly number[] }
 
 /**
  * Plans facts and draws scenarios of that plan; null when there is nothing to plan, or the search was superseded by a newer question of the same key.
@@ -25,18 +25,19 @@ export async function estimatePlan(db: Database, facts: PlanFacts, now: number, 
   const toCome = new WaitsToCome(db, facts, now)
   const given = studioProblem(facts, toCome, now)
   if (given.problem.activities.length === 0) return null
-  const { key, millis, schedules, ...drawing } = options
+  const { key, millis, schedules, batchIds, ...drawing } = options
   const solved = await search(key, given.problem, { millis, schedules })
   if (!solved.ok || solved.broken.length > 0) return null
   const recipe = promiseRecipe(facts, given, toCome, luck)
-  return { given, plan: solved.plan, outcome: await simulateInSlices(given.problem, solved.plan, recipe, drawing) }
+  return { given, plan: solved.plan, outcome: await simulateInSlices(given.problem, solved.plan, recipe, { ...drawing, jobs: jobsOf(given, batchIds) }) }
 }
 
 /** What was found for some batches that are one order; null where something of them has no time in the plan, or nothing is left to do. Minutes from the problem's zero. */
 export function estimateOf({ given, outcome }: Pick<Estimated, 'given' | 'outcome'>, facts: PlanFacts, batchIds: readonly number[]): Estimate | null {
-  const jobs = batchIds.map(id => given.problem.jobs.findIndex(job => job.id === `batch ${id}`)).filter(job => job >= 0)
-  return isStuck(given, facts, batchIds) ? null : estimateFor(outcome, jobs)
+  return isStuck(given, facts, batchIds) ? null : estimateFor(outcome, jobsOf(given, batchIds))
 }
+
+const jobsOf = ({ problem }: StudioProblem, batchIds: readonly number[]) => batchIds.map(id => problem.jobs.findIndex(job => job.id === `batch ${id}`)).filter(job => job >= 0)
 
 /** Whether some step of these batches is left out of the plan: then nobody can say when they end. */
 export function isStuck(given: StudioProblem, facts: PlanFacts, batchIds: readonly number[]): boolean {

@@ -7,6 +7,7 @@ import { dustApart, dustKeptOff } from '~~/server/planning/dust'
 import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { minutesFrom } from '#shared/drying/waits'
+import { grouped } from '#shared/grouped'
 import { planProblem } from '#shared/planning/problem'
 import type { PlanInput } from '#shared/planning/problem'
 import type { PlanProblem } from '#shared/planning/types'
@@ -54,8 +55,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
 }
 
 function worksOf(facts: PlanFacts): StepWork[] {
-  const turns = new Map<number, TurnRow[]>()
-  for (const turn of facts.turns) turns.set(turn.stepId, [...turns.get(turn.stepId) ?? [], turn])
+  const turns = grouped(facts.turns, turn => turn.stepId)
   const partOf = new Map(facts.targets.map(target => [target.stepId, target.partId]))
   const roomOf = new Map(facts.stays.map(stay => [stay.partId, stay.roomId]))
   const roomOfPiece = new Map(facts.stays.map(stay => [stay.pieceId, stay.roomId]))
@@ -66,9 +66,7 @@ function worksOf(facts: PlanFacts): StepWork[] {
 }
 
 function byPiece(works: readonly StepWork[]): StepWork[][] {
-  const pieces = new Map<number, StepWork[]>()
-  for (const work of works) pieces.set(work.step.pieceId, [...pieces.get(work.step.pieceId) ?? [], work])
-  return [...pieces.values()]
+  return [...grouped(works, work => work.step.pieceId).values()]
 }
 
 /** What waits for a turn that nobody can give a time to has no time either; nor has work that nobody here may do. */
@@ -112,13 +110,14 @@ function placesOf(facts: PlanFacts) {
 function restsOf(works: readonly StepWork[], facts: PlanFacts, lags: readonly LagInput[], known: ReadonlySet<string>): NonNullable<PlanInput['rests']> {
   const kinds = new Set(facts.places.map(place => place.kind))
   const units = new Map(facts.pieces.map(each => [each.id, each.sizeUnits]))
+  const next = grouped(lags, lag => lag.from ?? null)
   return works.flatMap(({ step, turns }): NonNullable<PlanInput['rests']>[number][] => {
     if (step.placeKind === null || !kinds.has(step.placeKind) || (step.kind !== 'coat' && step.kind !== 'glue-up')) return []
     const uses = { [placeId(step.placeKind)]: step.hold === null ? units.get(step.pieceId) ?? 1 : 1 }
     const coats = turns.filter(turn => turn.kind === 'work')
     const release = turns.find(turn => turn.kind === 'release')
     const last = coats[coats.length - 1]
-    const after = release ? activityId(release.id) : lags.find(lag => last && lag.from === activityId(last.id) && known.has(lag.to))?.to
+    const after = release ? activityId(release.id) : (last && next.get(activityId(last.id))?.find(lag => known.has(lag.to))?.to)
     if (!last) return release ? [{ from: null, to: activityId(release.id), uses }] : []
     return after ? [{ from: activityId(last.id), to: after, uses }] : []
   })
@@ -143,11 +142,7 @@ function familiesOf(works: readonly StepWork[]): NonNullable<PlanInput['families
 /** One job for each batch: like pieces of one job go through their work as a row. */
 function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): NonNullable<PlanInput['jobs']> {
   const pieces = new Map(facts.pieces.map(each => [each.id, each]))
-  const batches = new Map<number, StepWork[]>()
-  for (const work of works) {
-    const batchId = pieces.get(work.step.pieceId)?.batchId ?? 0
-    batches.set(batchId, [...batches.get(batchId) ?? [], work])
-  }
+  const batches = grouped(works, work => pieces.get(work.step.pieceId)?.batchId ?? 0)
   return [...batches].map(([batchId, own]) => {
     const row = pieces.get(own[0]?.step.pieceId ?? 0)
     return { id: `batch ${batchId}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), release: Math.max(0, minutesFrom(zeroAt, row?.startsAt ?? zeroAt, Math.ceil)), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }

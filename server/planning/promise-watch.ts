@@ -39,7 +39,7 @@ export async function reckonPromises(db: Database, studioId: number, now: number
   const facts = due.length === 0 ? null : readPlanFacts(db, studioId)
   if (!facts) return []
   const luck = luckOf(readBasis(db, studioId, now))
-  const made = await estimatePlan(db, facts, now, luck, search, { key: `watch ${studioId}`, ...asPlanned })
+  const made = await estimatePlan(db, facts, now, luck, search, { key: `watch ${studioId}`, batchIds: due.flatMap(each => each.batchIds), ...asPlanned })
   if (!made) return []
   const looked: Reckoned[] = []
   for (const watched of due) {
@@ -76,7 +76,7 @@ async function findRescue(db: Database, facts: PlanFacts, watched: Watched, now:
   const tried = [...others.values()].sort((a, b) => (a.weight ?? 1) - (b.weight ?? 1) || (b.dueAt ?? Infinity) - (a.dueAt ?? Infinity) || a.batchId - b.batchId).slice(0, rescueTries)
   for (const { batchId } of tried) {
     const without = withoutBatch(facts, batchId)
-    const made = await estimatePlan(db, without, now, luck, search, { key: `rescue ${facts.owner.id} ${batchId}`, millis: rescueMs, scenarios: rescueScenarios, causes: [] })
+    const made = await estimatePlan(db, without, now, luck, search, { key: `rescue ${facts.owner.id} ${batchId}`, batchIds: watched.batchIds, millis: rescueMs, scenarios: rescueScenarios, causes: [] })
     const found = made && estimateOf(made, without, watched.batchIds)
     if (made && found && made.given.zeroAt + found.cautious * minute <= watched.promisedAt) return batchId
   }

@@ -33,6 +33,7 @@ export class WaitsToCome {
   readonly #benches: ReturnType<typeof benchesOf>
   readonly #clocks = new Map<number | null, RoomClock>()
   readonly #kept = new Map<string, CoatPrediction>()
+  readonly #films = new Map<string, FilmToCome | null>()
   readonly #clockOf: (roomId: number | null) => RoomClock
   readonly #airs: Map<number, RoomAir>
   /** Rooms that nobody enters till somebody opens them. */
@@ -66,11 +67,19 @@ export class WaitsToCome {
 
   /** The film that a coat of this step would leave were it put on now, by a material as this bench has it; null where nothing dries. */
   film(step: PlanFacts['steps'][number], roomId: number | null): FilmToCome | null {
+    const key = `${step.materialVersionId} ${roomId} ${step.coatSize} ${step.ground}`
+    const known = this.#films.get(key)
+    if (known !== undefined) return known
+    const film = this.#filmOf(key, step, roomId)
+    this.#films.set(key, film)
+    return film
+  }
+
+  #filmOf(key: string, step: PlanFacts['steps'][number], roomId: number | null): FilmToCome | null {
     const material = step.materialVersionId === null ? null : this.#benches.materialFor(step.materialVersionId, 0, [])
     if (!material) return null
     const clock = this.#clocks.get(roomId) ?? this.#clockOf(roomId)
     this.#clocks.set(roomId, clock)
-    const key = `${step.materialVersionId} ${roomId} ${step.coatSize} ${step.ground}`
     return { key, material, coat: { appliedAt: this.now, size: step.coatSize, ground: step.ground }, spans: [{ clock, fromAt: this.now, toAt: null }] }
   }
 

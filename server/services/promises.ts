@@ -59,7 +59,7 @@ export async function promiseState(db: Database, studioId: number, batchId: numb
   const basis = readBasis(db, studioId, now)
   const ids = own.batches.map(each => each.id)
   const left = facts.pieces.some(piece => ids.includes(piece.batchId) && facts.steps.some(step => step.pieceId === piece.id && facts.turns.some(turn => turn.stepId === step.id)))
-  const made = left ? await estimatePlan(db, facts, now, luckOf(basis), search, { key: `batch ${batchId}`, ...asPlanned }) : null
+  const made = left ? await estimatePlan(db, facts, now, luckOf(basis), search, { key: `batch ${batchId}`, batchIds: ids, ...asPlanned }) : null
   const found = made && estimateOf(made, facts, ids)
   return {
     batchId, order: own.order?.name ?? null, batches: own.batches.map(each => each.name), dueAt: own.order?.dueAt ?? null,
@@ -85,7 +85,7 @@ export async function promiseForNew(db: Database, studioId: number, request: Bat
   const added = factsWithBatch(db, facts, { ...request, startsAt, dueAt: request.dueAt === null ? null : Date.parse(request.dueAt) }, startsAt)
   if (!added) return malformed({ scheduleId: fields.schedule })
   const basis = readBasis(db, studioId, now)
-  const made = await estimatePlan(db, added, now, luckOf(basis), search, { key: 'new', millis: searchMs })
+  const made = await estimatePlan(db, added, now, luckOf(basis), search, { key: 'new', batchIds: [batchToCome], millis: searchMs })
   const found = made && estimateOf(made, added, [batchToCome])
   if (made && found) return dateEstimate(found, made, added, basis)
   return made ? impossible(noDate.stuck) : conflict(promiseRefusals.newer)

@@ -13,6 +13,7 @@ import type { Database } from '~~/server/utils/database'
 import { absent, conflict, malformed } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { scoped } from '~~/server/utils/scoped'
+import { grouped } from '#shared/grouped'
 import { openSpans } from '#shared/open-hours'
 import type { Plan } from '#shared/planning/types'
 import type { BatchToComeRequest, PushedBatch, StartPlan } from '#shared/schemas/promise'
@@ -22,7 +23,7 @@ import { fields, promiseRefusals } from '#shared/words/promise'
 
 const minute = 60_000
 /** Each way to start is searched for so long, ms: four of them and what is around them stay under two seconds. */
-const searchMs = 250
+const searchMs = 160
 /** A batch that ends so little later is not pushed, minutes (planning value). */
 const pushedMin = 30
 
@@ -39,10 +40,13 @@ export async function checkStart(db: Database, studioId: number, request: BatchT
   const given: Omit<BatchToCome, 'startsAt'> = { ...request, dueAt: request.dueAt === null ? null : Date.parse(request.dueAt) }
   const plans: StartPlan[] = []
   const batches = batchesOf(db, studioId)
+  let waits: WaitsToCome | null = null
   for (const asked of startsToAsk(facts, now)) {
     const added = factsWithBatch(db, facts, { ...given, startsAt: asked.at }, asked.pinned ? asked.at : null)
     if (!added) return malformed({ scheduleId: fields.schedule })
-    const problem = studioProblem(added, new WaitsToCome(db, added, now), now)
+    // What is to be put on is the same whenever it starts.
+    waits ??= new WaitsToCome(db, added, now)
+    const problem = studioProblem(added, waits, now)
     const solved = await search(`start ${asked.start}`, problem.problem, { millis: searchMs })
     if (!solved.ok) return conflict(promiseRefusals.newer)
     plans.push(startPlan(asked, solved.plan, problem, added, batches))
@@ -84,9 +88,10 @@ function startPlan(asked: Asked, plan: Plan, given: StudioProblem, facts: PlanFa
   const batchOf = batchOfActivity(given, facts)
   const own = plan.entries.filter(entry => batchOf.get(entry.activity) === batchToCome)
   const at = (minutes: number) => given.zeroAt + minutes * minute
-  const startsAt = asked.pinned ? asked.at : own.length === 0 ? asked.at : at(Math.min(...own.map(entry => sessionStart(plan, entry.activity) ?? entry.start)))
+  const startsAt = asked.pinned ? asked.at : own.length === 0 ? asked.at : at(Math.min(...own.map(entry => (entry.session === null ? null : plan.sessions[entry.session]?.start) ?? entry.start)))
   const pieceIds = new Set(facts.pieces.filter(piece => piece.batchId === batchToCome).map(piece => piece.id))
-  const turns = facts.steps.filter(step => pieceIds.has(step.pieceId)).reduce((sum, step) => sum + facts.turns.filter(turn => turn.stepId === step.id).length, 0)
+  const stepIds = new Set(facts.steps.filter(step => pieceIds.has(step.pieceId)).map(step => step.id))
+  const turns = facts.turns.filter(turn => stepIds.has(turn.stepId)).length
   const spans = openSpans(studioHours(facts), studioZone(facts.owner.zone), startsAt, startsAt + minute)
   return {
     start: asked.start, startsAt, endsAt: own.length === 0 ? null : at(Math.max(...own.map(entry => entry.end))), missed: missedIn(plan, given, own.map(entry => entry.activity)),
@@ -94,20 +99,19 @@ function startPlan(asked: Asked, plan: Plan, given: StudioProblem, facts: PlanFa
   }
 }
 
-const sessionStart = (plan: Plan, activity: string) => plan.sessions.find(session => session.activities.includes(activity))?.start ?? null
-
 /** Windows of the batch that shut with nobody at them, one for each step. */
 function missedIn(plan: Plan, given: StudioProblem, own: readonly string[]): StartPlan['missed'] {
   const entries = new Map(plan.entries.map(entry => [entry.activity, entry]))
   const names = new Map<string, string>(given.works.flatMap(({ step, turns }) => turns.map(turn => [activityId(turn.id), step.name] as const)))
+  const lags = grouped(given.problem.lags, lag => lag.to)
   const found = new Map<string, StartPlan['missed'][number]>()
   for (const id of own) {
     const entry = entries.get(id)
     if (!entry?.afterRecovery) continue
-    for (const lag of given.problem.lags) {
+    for (const lag of lags.get(id) ?? []) {
       const origin = lag.from === null ? 0 : entries.get(lag.from)?.end
       const last = lag.windows[lag.windows.length - 1]
-      if (lag.to !== id || origin === undefined || !last || last[1] === null || entry.start <= origin + last[1]) continue
+      if (origin === undefined || !last || last[1] === null || entry.start <= origin + last[1]) continue
       const step = names.get(id) ?? ''
       if (!found.has(step)) found.set(step, { step, opensAt: given.zeroAt + (origin + last[0]) * minute, shutsAt: given.zeroAt + (origin + last[1]) * minute })
     }
@@ -124,10 +128,10 @@ function handsIn(plan: Plan, given: StudioProblem, own: ReadonlySet<string>): St
     edges.push([from, people], [to, -people])
   }
   for (const entry of plan.entries) if (own.has(entry.activity) && entry.session === null) take(entry.start, entry.end, entry.resources.length)
+  const entryOf = new Map(plan.entries.map(entry => [entry.activity, entry]))
   for (const session of plan.sessions) {
-    const mine = session.activities.filter(id => own.has(id))
-    if (mine.length === 0) continue
-    const entries = plan.entries.filter(entry => mine.includes(entry.activity))
+    const entries = session.activities.flatMap(id => (own.has(id) ? entryOf.get(id) ?? [] : []))
+    if (entries.length === 0) continue
     const family = given.problem.families.find(each => each.id === session.family)
     const from = Math.min(...entries.map(entry => entry.start)) - (family?.setup ?? 0)
     take(from, Math.max(...entries.map(entry => entry.end)) + (family?.cleanup ?? 0), session.resources.length)

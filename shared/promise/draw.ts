@@ -42,12 +42,17 @@ function hoursLeft(open: readonly Interval[], share: number, draws: Float64Array
   })
 }
 
+/** When a window opens: as the plan has it, or as late as the film really is. */
+function opening(planned: number, draw: LagDraw, window: number, wait: (of: DoubtfulWait) => number): number {
+  const opens = draw.windows[window]?.opens
+  return Math.max(planned, draw.least, draw.wait ? wait(draw.wait) : 0, opens ? wait(opens) : 0)
+}
+
 /** As the plan has it, or as late as the film really is: nobody goes by less than the plan's caution. */
 function windowsOf(planned: readonly LagWindow[], draw: LagDraw, wait: (of: DoubtfulWait) => number): readonly LagWindow[] {
-  const least = Math.max(draw.least, draw.wait ? wait(draw.wait) : 0)
   return planned.map(([from, to], i): LagWindow => {
     const drawn = draw.windows[i]
-    const opens = Math.max(from, least, drawn?.opens ? wait(drawn.opens) : 0)
+    const opens = opening(from, draw, i, wait)
     if (to === null) return [opens, null]
     return [opens, Math.max(opens, drawn?.shuts ? Math.min(to, wait(drawn.shuts)) : to)]
   })
@@ -67,12 +72,20 @@ export function drawnScenario(problem: PlanProblem, recipe: Recipe, luck: Draws)
   const waitFor = (film: number) => (of: DoubtfulWait) => waitOf(of, luck.materials[recipe.films[film] ?? 0] ?? 0, luck.films[film] ?? 0)
   const paced = (minutes: number, i: number) => (minutes === 0 ? 0 : Math.max(1, Math.round(minutes * Math.exp(minuteSd.week * luck.week + minuteSd.single * (luck.minutes[i] ?? 0)))))
   const size = problem.activities.length
+  const least = new Float64Array(problem.lags.length)
   const windows = problem.lags.map((lag, i) => {
     const draw = recipe.lags[i]
-    return draw ? windowsOf(lag.windows, draw, waitFor(draw.film)) : lag.windows
+    const [from, to] = lag.windows[0]!
+    if (draw && lag.windows.length === 1 && to === null) {
+      least[i] = opening(from, draw, 0, waitFor(draw.film))
+      return lag.windows
+    }
+    const drawn = draw ? windowsOf(lag.windows, draw, waitFor(draw.film)) : lag.windows
+    least[i] = drawn[0]![0]
+    return drawn
   })
   return {
-    windows, least: Float64Array.from(windows, each => each[0]![0]),
+    windows, least,
     tails: Float64Array.from(recipe.tails, tail => Math.max(tail.planned, waitFor(tail.film)(tail.wait))),
     againWaits: Float64Array.from(recipe.again, ({ planned, film, wait }) => (wait ? Math.max(planned, waitFor(film)(wait)) : planned)),
     again: Uint8Array.from(recipe.again, (_, i) => Number((luck.again[i] ?? 1) < recipe.luck.rework)),

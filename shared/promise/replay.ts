@@ -1,44 +1,44 @@
 import { missed } from '#shared/planning/objective'
-import type { Interval, LagWindow, Plan, PlanProblem } from '#shared/planning/types'
+import type { Plan, PlanProblem } from '#shared/planning/types'
+import { grouped } from '#shared/grouped'
+import { KeepApart } from '#shared/promise/keep-apart'
+import { firstOpening, intoWindow, raise } from '#shared/promise/moments'
 import { operationsOf } from '#shared/promise/operations'
 import type { Operation } from '#shared/promise/operations'
+import { rowsOf } from '#shared/promise/rows'
+import type { Rows } from '#shared/promise/rows'
+import { turnsOf } from '#shared/promise/turns'
 import type { Recipe, Scenario } from '#shared/promise/types'
 
 /** Work longer than this is gone on with after an interruption, minutes (planning value). */
 const longMin = 60
 
-/** First minute of `from` or later from which `length` minutes lie in open time; null when there is none. Touching intervals count as one. */
-function firstOpening(open: readonly Interval[], from: number, length: number): number | null {
-  let low = 0
-  let high = open.length
-  while (low < high) {
-    const middle = (low + high) >> 1
-    if (open[middle]![1] < from) low = middle + 1
-    else high = middle
-  }
-  for (let i = low; i < open.length; i++) {
-    let to = open[i]![1]
-    for (let k = i + 1; k < open.length && open[k]![0] === to; k++) to = open[k]![1]
-    const start = Math.max(from, open[i]![0])
-    if (start + length <= to) return start
-  }
-  return null
-}
-
 /**
- * The decisions of one plan, made ready to be gone through many times: who does what after what and not before the plan says, each as early
- * as its lags, its hands and their hours allow. What `evaluate` says of the same decisions, many times as fast: members of a session
- * one by one, so that a piece that drops out keeps nobody up, and each in the order in which it comes to be ready.
+ * The decisions of one plan, made ready to be gone through many times: who does what after what and not before the plan says, who gets a place
+ * after whom, each as early as its lags, its hands and their hours allow. What `evaluate` says of the same decisions, many times as fast, and with
+ * places, dust and vapour besides: members of a session one by one, so that a piece that drops out keeps nobody up, and
+ * each in the order in which it comes to be ready.
  */
 export class Replay {
   private readonly operations: readonly Operation[]
   private readonly size: number
   private readonly jobs: readonly (readonly number[] | null)[]
-  private readonly capacities: readonly number[]
+  /** Units of each resource lie end to end: when each is next free, the soonest first. */
+  private readonly lanes: Int32Array
+  private readonly free: Float64Array
   /** In the order of the plan: each comes after all it waits for. */
-  private readonly order: readonly number[]
+  private readonly order: Int32Array
   /** The first of the operations that are done only where a coat is done again. */
   private readonly firstAgain: number
+  private readonly after: Rows<'from' | 'lag' | 'plain'>
+  private readonly needs: Rows<'resource' | 'amount'>
+  private readonly turns: Rows<'first'>
+  private readonly apart: KeepApart
+  /** The activity whose dust, film or vapour an operation makes; -1 for a set-up. */
+  private readonly owner: Int32Array
+  private readonly release: Float64Array
+  private readonly notBefore: Float64Array
+  private readonly simple: Uint8Array
   private readonly keys: Float64Array
   private readonly ends: Float64Array
   private readonly starts: Float64Array
@@ -46,47 +46,76 @@ export class Replay {
   private readonly minutes: Float64Array
   private readonly last: Int32Array
   private readonly places: Float64Array
+  /** What an end that is asked for depends on. */
+  private readonly wanted: Uint8Array
+  /** A power of two above the number of operations: a key times this, plus a place, is one whole number. */
+  private readonly spread: number
 
-  constructor(private readonly problem: PlanProblem, plan: Plan, private readonly recipe: Recipe) {
+  /** @param asked the jobs whose ends are wanted, by number: a run is over when they are done, and the others' ends are NaN; null: all */
+  constructor(private readonly problem: PlanProblem, plan: Plan, private readonly recipe: Recipe, asked: readonly number[] | null = null) {
     this.size = problem.activities.length
-    this.operations = operationsOf(problem, plan, recipe)
+    const operations = operationsOf(problem, plan, recipe)
+    this.operations = operations
     const byId = new Map(problem.activities.map((activity, i) => [activity.id, i]))
-    const isPlaced = (id: string) => this.operations[byId.get(id)!]!.plannedAt < Infinity
-    this.jobs = problem.jobs.map(job => (job.activities.every(isPlaced) ? job.activities.map(id => byId.get(id)!) : null))
-    this.capacities = problem.resources.map(each => each.capacity)
-    const count = this.operations.length
+    const isPlaced = (id: string) => operations[byId.get(id)!]!.plannedAt < Infinity
+    this.jobs = problem.jobs.map((job, i) => ((asked?.includes(i) ?? true) && job.activities.every(isPlaced) ? job.activities.map(id => byId.get(id)!) : null))
+    this.lanes = new Int32Array(problem.resources.length + 1)
+    problem.resources.forEach(({ capacity }, i) => {
+      this.lanes[i + 1] = this.lanes[i]! + capacity
+    })
+    this.free = new Float64Array(this.lanes[problem.resources.length]!)
+    const count = operations.length
     this.firstAgain = count - recipe.again.length
+    this.after = rowsOf(operations.map(each => each.after.map(({ plain, ...rest }) => ({ ...rest, plain: Number(plain) }))), ['from', 'lag', 'plain'])
+    this.needs = rowsOf(operations.map(each => each.needs), ['resource', 'amount'])
+    const turns = grouped(turnsOf(problem, plan, operations), turn => turn.next)
+    this.turns = rowsOf(operations.map((_, i) => turns.get(i) ?? []), ['first'])
+    this.apart = new KeepApart(problem)
+    this.owner = Int32Array.from(operations, (each, i) => each.activity ?? (each.again === null ? -1 : recipe.again[i - this.firstAgain]!.activity))
+    this.release = Float64Array.from(operations, each => each.release)
+    this.notBefore = Float64Array.from(operations, each => each.notBefore)
+    this.simple = Uint8Array.from(operations, each => Number(each.simple))
     this.keys = new Float64Array(count)
     this.starts = new Float64Array(count)
     this.ends = new Float64Array(count)
-    this.minutes = Float64Array.from(this.operations, each => each.minutes)
+    this.minutes = Float64Array.from(operations, each => each.minutes)
     this.last = new Int32Array(count)
-    this.order = this.operations.map((_, i) => i).filter(i => this.operations[i]!.plannedAt < Infinity)
-      .sort((a, b) => this.operations[a]!.plannedAt - this.operations[b]!.plannedAt || this.rank(b) - this.rank(a) || a - b)
+    this.order = Int32Array.from(operations.map((_, i) => i).filter(i => operations[i]!.plannedAt < Infinity)
+      .sort((a, b) => operations[a]!.plannedAt - operations[b]!.plannedAt || this.rank(b) - this.rank(a) || a - b))
     this.places = new Float64Array(this.order.length)
+    this.wanted = new Uint8Array(count)
+    for (const i of this.jobs.flatMap(own => own ?? [])) this.wanted[i] = 1
+    for (const [k, { activity }] of recipe.again.entries()) this.wanted[this.firstAgain + k] = this.wanted[activity]!
+    for (const { job, from } of recipe.tails) if (from !== null && this.jobs[job]) this.wanted[from] = 1
+    this.spread = 2 ** Math.ceil(Math.log2(this.order.length + 1))
   }
 
   /** Of equal starts what is done again goes before what waits for it, and a set-up before its members. */
-  private rank(operation: number): number {
-    return this.operations[operation]!.activity === null ? 1 : 0
-  }
+  private rank = (operation: number) => Number(this.operations[operation]!.activity === null)
 
   /**
    * The minute by which each job is ready, or NaN where something of it has no start.
-   * @param waits false: nothing waits for hands that are busy, nor for the plan's own turn
+   * @param waits false: nothing waits for hands that are busy, for a place, for dust or vapour, nor for the plan's own turn
    */
   run(scenario: Scenario, waits = true): Float64Array {
     this.prepare(scenario)
     this.propagate(scenario, waits)
-    const free = this.capacities.map(capacity => new Float64Array(capacity))
     const { order } = this
     const sorted = this.inOrder(scenario)
-    for (let i = 0; i < sorted.length; i++) this.place(order[((sorted[i]! % order.length) + order.length) % order.length]!, scenario, waits, free)
+    let left = 0
+    for (let n = 0; n < order.length; n++) if (this.wanted[order[n]!] === 1 && this.isOn(order[n]!, scenario)) left++
+    for (let n = 0; n < sorted.length && left > 0; n++) {
+      const i = order[sorted[n]! - Math.floor(sorted[n]! / this.spread) * this.spread]!
+      this.place(i, scenario, waits)
+      left -= this.wanted[i]!
+    }
     return this.jobEnds(scenario)
   }
 
   private prepare(scenario: Scenario) {
     const { firstAgain, minutes, last } = this
+    this.free.fill(0)
+    this.apart.clear()
     minutes.set(scenario.minutes)
     minutes.set(scenario.againMinutes, firstAgain)
     for (let i = 0; i < last.length; i++) last[i] = i
@@ -97,7 +126,7 @@ export class Replay {
   private inOrder(scenario: Scenario): Float64Array {
     const { order, keys, places } = this
     let count = 0
-    for (let place = 0; place < order.length; place++) if (this.isOn(order[place]!, scenario)) places[count++] = Math.round(keys[order[place]!]!) * order.length + place
+    for (let place = 0; place < order.length; place++) if (this.isOn(order[place]!, scenario)) places[count++] = Math.round(keys[order[place]!]!) * this.spread + place
     return places.subarray(0, count).sort()
   }
 
@@ -112,85 +141,115 @@ export class Replay {
 
   /** When each could be begun were hands always free: the order in which a studio comes to its work. */
   private propagate(scenario: Scenario, waits: boolean) {
-    const { order, operations, keys, ends, minutes } = this
+    const { order, operations, keys, starts, ends, minutes, release, notBefore } = this
+    const { at: from, of: { from: before, lag: lags } } = this.after
     for (let n = 0; n < order.length; n++) {
       const i = order[n]!
       if (!this.isOn(i, scenario)) continue
-      const operation = operations[i]!
-      let at = waits ? Math.max(operation.notBefore, operation.release) : operation.release
-      for (let k = 0; k < operation.after.length; k++) {
-        const { from, lag } = operation.after[k]!
-        const moment = this.originOf(operation, from) + (lag < 0 ? this.afterCoat(operation, scenario) : scenario.least[lag]!)
+      let at = waits ? Math.max(notBefore[i]!, release[i]!, this.turnAt(i)) : release[i]!
+      for (let k = from[i]!; k < from[i + 1]!; k++) {
+        const lag = lags[k]!
+        const moment = this.originOf(i, before[k]!) + (lag < 0 ? this.afterCoat(i, scenario) : scenario.least[lag]!)
         if (moment > at) at = moment
       }
-      if (operation.fixedAt !== null) at = operation.fixedAt
+      const fixed = operations[i]!.fixedAt
+      if (fixed !== null) at = fixed
       keys[i] = at
+      starts[i] = at
       ends[i] = at + minutes[i]!
     }
   }
 
-  private originOf(operation: Operation, from: number): number {
+  /** When its turn has come at its place. */
+  private turnAt(i: number): number {
+    const { at, of: { first } } = this.turns
+    let moment = 0
+    for (let k = at[i]!; k < at[i + 1]!; k++) {
+      const start = this.starts[first[k]!]!
+      if (start > moment) moment = start
+    }
+    return moment
+  }
+
+  private originOf(i: number, from: number): number {
     if (from < 0) return 0
     // What is done again waits for the coat itself.
-    return this.ends[operation.again === null ? this.last[from]! : from]!
+    return this.ends[i < this.firstAgain ? this.last[from]! : from]!
   }
 
   /** What is done again waits till the coat has dried; a member follows its set-up at once. */
-  private afterCoat = ({ again }: Operation, scenario: Scenario) => (again === null ? 0 : scenario.againWaits[again]!)
+  private afterCoat(i: number, scenario: Scenario): number {
+    return i < this.firstAgain ? 0 : scenario.againWaits[i - this.firstAgain]!
+  }
 
   /** Earliest start inside the windows of every lag; past a missed one. */
-  private ready(operation: Operation, from: number, scenario: Scenario): number {
-    let at = Math.max(from, operation.release)
+  private ready(i: number, from: number, scenario: Scenario): number {
+    const { at: rows, of: { from: origins, lag: lags, plain } } = this.after
+    let at = Math.max(from, this.release[i]!)
     for (let before = NaN; before !== at;) {
       before = at
-      for (let k = 0; k < operation.after.length; k++) {
-        const { from: other, lag, plain } = operation.after[k]!
-        const origin = this.originOf(operation, other)
-        if (plain) at = Math.max(at, origin + (lag < 0 ? this.afterCoat(operation, scenario) : scenario.least[lag]!))
+      for (let k = rows[i]!; k < rows[i + 1]!; k++) {
+        const lag = lags[k]!
+        const origin = this.originOf(i, origins[k]!)
+        if (plain[k] === 1) at = Math.max(at, origin + (lag < 0 ? this.afterCoat(i, scenario) : scenario.least[lag]!))
         else at = intoWindow(scenario.windows[lag]!, origin, at)
       }
-      if (operation.simple) return at
+      if (this.simple[i] === 1) return at
     }
     return at
   }
 
-  private recovery(operation: Operation, at: number, scenario: Scenario): number {
+  private recovery(i: number, at: number, scenario: Scenario): number {
     let minutes = 0
-    for (const each of operation.after) {
+    for (const each of this.operations[i]!.after) {
       if (each.lag < 0) continue
       const { recovery } = this.problem.lags[each.lag]!
-      if (recovery && missed(scenario.windows[each.lag]!, at - this.originOf(operation, each.from))) minutes += recovery.minutes
+      if (recovery && missed(scenario.windows[each.lag]!, at - this.originOf(i, each.from))) minutes += recovery.minutes
     }
     return minutes
   }
 
-  private place(i: number, scenario: Scenario, waits: boolean, free: Float64Array[]) {
+  /** When as many of each resource are free as it needs. */
+  private freeAt(i: number): number {
+    const { at: rows, of: { resource, amount } } = this.needs
+    const { lanes, free } = this
+    let at = 0
+    for (let k = rows[i]!; k < rows[i + 1]!; k++) {
+      const of = resource[k]!
+      const moment = free[Math.min(lanes[of]! + amount[k]!, lanes[of + 1]!) - 1]!
+      if (moment > at) at = moment
+    }
+    return at
+  }
+
+  private place(i: number, scenario: Scenario, waits: boolean) {
     const operation = this.operations[i]!
     const minutes = this.minutes[i]!
     if (operation.fixedAt !== null) {
-      const start = operation.fixedAt > 0 ? this.ready(operation, operation.fixedAt, scenario) : operation.fixedAt
-      return this.keep(i, start, start + minutes, free)
+      const start = operation.fixedAt > 0 ? this.ready(i, operation.fixedAt, scenario) : operation.fixedAt
+      return this.keep(i, start, start + minutes)
     }
-    let at = waits ? Math.max(0, operation.notBefore) : 0
-    if (waits) for (const { resource, amount } of operation.needs) at = Math.max(at, free[resource]![Math.min(amount, free[resource]!.length) - 1] ?? 0)
+    let at = waits ? Math.max(0, this.notBefore[i]!, this.turnAt(i), this.freeAt(i)) : 0
     const splittable = operation.splittable || (scenario.breakable && minutes > longMin)
     const atOnce = splittable || operation.mayRunOver
     let length = minutes
     for (let before = NaN; before !== at;) {
-      if (Number.isNaN(before) || !operation.simple) at = this.ready(operation, at, scenario)
+      if (Number.isNaN(before) || this.simple[i] === 0) at = this.ready(i, at, scenario)
       before = at
-      if (operation.recovers) length = minutes + this.recovery(operation, at, scenario)
-      at = this.opens(operation, at, atOnce ? Math.min(1, length) : length, scenario)
+      if (operation.recovers) length = minutes + this.recovery(i, at, scenario)
+      at = this.opens(i, at, atOnce ? Math.min(1, length) : length, scenario)
+      if (waits && this.owner[i]! >= 0) at = this.apart.firstFree(this.owner[i]!, at, length)
     }
-    this.keep(i, at, splittable ? this.paused(operation, at, length, scenario) : at + length, free)
+    this.keep(i, at, splittable ? this.paused(i, at, length, scenario) : at + length)
   }
 
-  private opens({ needs }: Operation, from: number, length: number, { open }: Scenario): number {
+  private opens(i: number, from: number, length: number, { open }: Scenario): number {
+    const { at: rows, of: { resource } } = this.needs
     let at = from
     for (let before = NaN; before !== at;) {
       before = at
-      for (const { resource } of needs) {
-        const hours = open[resource]
+      for (let k = rows[i]!; k < rows[i + 1]!; k++) {
+        const hours = open[resource[k]!]
         if (hours) at = firstOpening(hours, at, length) ?? at
       }
     }
@@ -198,13 +257,13 @@ export class Replay {
   }
 
   /** Where work ends that pauses whenever somebody it needs is away. */
-  private paused(operation: Operation, start: number, minutes: number, scenario: Scenario): number {
+  private paused(i: number, start: number, minutes: number, scenario: Scenario): number {
     let at = start
     let left = minutes
     while (left > 0) {
-      const now = this.opens(operation, at, 1, scenario)
+      const now = this.opens(i, at, 1, scenario)
       let shuts = Infinity
-      for (const { resource } of operation.needs) {
+      for (const { resource } of this.operations[i]!.needs) {
         const hours = scenario.open[resource]
         if (hours) shuts = Math.min(shuts, hours.find(([from, to]) => from <= now && now < to)?.[1] ?? Infinity)
       }
@@ -215,13 +274,17 @@ export class Replay {
     return at
   }
 
-  private keep(i: number, start: number, end: number, free: Float64Array[]) {
+  private keep(i: number, start: number, end: number) {
     this.starts[i] = start
     this.ends[i] = end
     if (end <= start) return
-    for (const { resource, amount } of this.operations[i]!.needs) {
-      const lanes = free[resource]!
-      for (let k = Math.min(amount, lanes.length) - 1; k >= 0; k--) raise(lanes, k, end)
+    if (this.owner[i]! >= 0) this.apart.take(this.owner[i]!, start, end)
+    const { at: rows, of: { resource, amount } } = this.needs
+    const { lanes, free } = this
+    for (let k = rows[i]!; k < rows[i + 1]!; k++) {
+      const from = lanes[resource[k]!]!
+      const to = lanes[resource[k]! + 1]!
+      for (let lane = Math.min(from + amount[k]!, to) - 1; lane >= from; lane--) raise(free, lane, to, end)
     }
   }
 
@@ -233,16 +296,4 @@ export class Replay {
     }
     return ends
   }
-}
-
-function intoWindow(windows: readonly LagWindow[], origin: number, at: number): number {
-  for (const [from, to] of windows) if (to === null || origin + to >= at) return Math.max(at, origin + from)
-  return at
-}
-
-/** Raises one of some sorted numbers to at least `to`, and keeps them sorted. */
-function raise(lanes: Float64Array, at: number, to: number) {
-  let k = at
-  for (; k + 1 < lanes.length && lanes[k + 1]! < to; k++) lanes[k] = lanes[k + 1]!
-  lanes[k] = k === at ? Math.max(lanes[k]!, to) : to
 }

@@ -8,23 +8,24 @@ import type { PromiseCause } from '#shared/terms'
 /** Scenarios that a promise is made from. */
 export const usualScenarios = 200
 /** In so many of them each cause is switched off in turn: enough to tell half a day. */
-const usualQuestioned = 100
+const usualQuestioned = 60
 /** Of the scenarios, the share that are done by the date to promise. */
 export const cautiousShare = 0.9
 
 /** Ends by scenario in minutes from the problem's zero, NaN where something has no start. `without`: the same draws with one cause switched off. */
 export interface Outcome { planned: Float64Array, all: Float64Array[], without: Record<PromiseCause, Float64Array[]> }
 
-export interface SimulateOptions { seed?: number, scenarios?: number, causes?: readonly PromiseCause[] }
+/** `jobs`: those whose ends are wanted, by number; the others' are NaN. */
+export interface SimulateOptions { seed?: number, scenarios?: number, causes?: readonly PromiseCause[], jobs?: readonly number[] | null }
 
 const every: Causes = { drying: true, rework: true, minutes: true, hours: true, waiting: true }
 
 /**
- * Goes through a plan's decisions in many drawn scenarios, and in half of them again with each cause switched off in turn on the same draws. Yields after every
+ * Goes through a plan's decisions in many drawn scenarios, and in some of them again with each cause switched off in turn on the same draws. Yields after every
  * scenario, so that the caller may do something else meanwhile. The same seed gives the same outcome. Ends are by job, one array for each scenario.
  */
-export function* simulate(problem: PlanProblem, plan: Plan, recipe: Recipe, { seed = 1, scenarios = usualScenarios, causes = promiseCauses }: SimulateOptions = {}): Generator<number, Outcome> {
-  const replay = new Replay(problem, plan, recipe)
+export function* simulate(problem: PlanProblem, plan: Plan, recipe: Recipe, { seed = 1, scenarios = usualScenarios, causes = promiseCauses, jobs = null }: SimulateOptions = {}): Generator<number, Outcome> {
+  const replay = new Replay(problem, plan, recipe, jobs)
   const plain = plainScenario(problem, recipe)
   const outcome: Outcome = { planned: replay.run(plain), all: [], without: { drying: [], rework: [], minutes: [], hours: [], waiting: [] } }
   for (let number = 0; number < scenarios; number++) {

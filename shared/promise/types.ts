@@ -46,7 +46,7 @@ export interface Recipe {
 
 export type Causes = Readonly<Record<PromiseCause, boolean>>
 
-/** One way the work may go. Lag windows by lag, and when the first of them opens; minutes by activity; whether a coat is done again by its place; hours by resource. `breakable`: long work is gone on with after an interruption. */
+/** One way the work may go. Lag windows by lag (as planned where there is one that never shuts), and when the first of them opens; minutes by activity; whether a coat is done again by its place; hours by resource. `breakable`: long work is gone on with after an interruption. */
 export interface Scenario {
   windows: readonly (readonly LagWindow[])[]
   least: Float64Array

@@ -59,4 +59,57 @@ describe('going through a plan', () => {
       expect([...replay.startsOf()], `seed ${seed}`).toEqual(evaluate(slower, decisionsOf(plan)).entries.map(entry => entry.start))
     }
   })
+
+  const always = { id: 'hands', capacity: 9, open: null, changes: [] }
+  const startsIn = (input: PlanInput, slower: (minutes: number, i: number) => number, waits = true) => {
+    const problem = planProblem(input)
+    const plan = solve(problem, { schedules: 4 })
+    const replay = new Replay(problem, plan, nothing(problem.lags.length))
+    const plain = plainScenario(problem, nothing(problem.lags.length))
+    replay.run({ ...plain, minutes: plain.minutes.map(slower) }, waits)
+    return { planned: plan.entries.map(entry => entry.start), starts: [...replay.startsOf()] }
+  }
+
+  it('waits for the place that another piece has not left yet', () => {
+    // One clamp: glued in 10 minutes and clamped for 50, A leaves it at 60 and B is glued from then on. If a glue-up takes 40, A leaves at 90.
+    const glued = (id: string) => ({ activities: [{ id: `${id} glue`, minutes: 10, uses: { hands: 1 } }, { id: `${id} out`, minutes: 0, uses: { hands: 1 } }], lag: { from: `${id} glue`, to: `${id} out`, min: 50 }, rest: { from: `${id} glue`, to: `${id} out`, uses: { clamp: 1 } } })
+    const [a, b] = [glued('A'), glued('B')]
+    const input: PlanInput = {
+      resources: [always, { id: 'clamp', capacity: 1, open: null, changes: [] }], activities: [...a.activities, ...b.activities], lags: [a.lag, b.lag], rests: [a.rest, b.rest],
+      jobs: [{ id: 'A', activities: ['A glue', 'A out'] }, { id: 'B', activities: ['B glue', 'B out'], release: 60 }], horizon: 1440,
+    }
+    const slow = (minutes: number, i: number) => (i === 0 ? 40 : minutes)
+    expect(startsIn(input, minutes => minutes).starts).toEqual(startsIn(input, minutes => minutes).planned)
+    expect(startsIn(input, slow).planned).toEqual([0, 60, 60, 120])
+    expect(startsIn(input, slow).starts).toEqual([0, 90, 90, 150])
+    // Where nothing waits for anything but its own piece.
+    expect(startsIn(input, slow, false).starts).toEqual([0, 90, 60, 120])
+  })
+
+  it('keeps dust off a film that is there for longer, by turns', () => {
+    // A coat of 20 minutes that dust may not touch for 30 more; sanding for 15 then begins at 50. If the coat takes 45, it begins at 75.
+    const input: PlanInput = {
+      resources: [always], activities: [{ id: 'coat', minutes: 20, uses: { hands: 1 } }, { id: 'sand', minutes: 15, uses: { hands: 1 } }],
+      apart: [{ id: 'room', one: [{ activity: 'sand', after: 0 }], other: [{ activity: 'coat', after: 30 }] }],
+      jobs: [{ id: 'coat', activities: ['coat'], due: 20, weight: 5 }, { id: 'sand', activities: ['sand'], release: 10 }], horizon: 1440,
+    }
+    const slow = (minutes: number, i: number) => (i === 0 ? 45 : minutes)
+    expect(startsIn(input, slow).planned).toEqual([0, 50])
+    expect(startsIn(input, slow).starts).toEqual([0, 75])
+    expect(startsIn(input, slow, false).starts).toEqual([0, 10])
+  })
+
+  it('stops when the jobs asked for are done, with the same ends', () => {
+    for (let seed = 1; seed <= 20; seed++) {
+      const given = studio(seed, true)
+      const problem = planProblem({ ...given, jobs: given.activities.map(({ id }) => ({ id, activities: [id] })) })
+      const plan = solve(problem, { schedules: 4 })
+      const plain = plainScenario(problem, nothing(problem.lags.length))
+      const slower = { ...plain, minutes: plain.minutes.map((minutes, i) => minutes + (i % 3) * 20) }
+      const all = new Replay(problem, plan, nothing(problem.lags.length)).run(slower)
+      const some = new Replay(problem, plan, nothing(problem.lags.length), [0, 2]).run(slower)
+      expect([some[0], some[2]]).toEqual([all[0], all[2]])
+      expect(some[1]).toBeNaN()
+    }
+  })
 })
