@@ -70,6 +70,17 @@ export const readingImport = sqliteTable('reading_import', {
 ])
 
 /** A note of the air in a room. `doubt` is the extra log standard deviation of its source. */
+/** A secret address at which a sensor tells the air of one room. What it sent last that could not be read is kept, so that it can be mended. */
+export const sensorAddress = sqliteTable('sensor_address', {
+  studioId: studioColumn(),
+  roomId: integer('room_id').primaryKey(),
+  tokenHash: text('token_hash').notNull().unique(),
+  madeAt: instant('made_at').notNull(),
+  heardAt: instant('heard_at'),
+  refusedAt: instant('refused_at'),
+  refusal: text('refusal'),
+}, t => [belongsTo(t, t.roomId, room)])
+
 export const reading = sqliteTable('reading', {
   id: id(),
   studioId: studioColumn(),

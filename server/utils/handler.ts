@@ -100,7 +100,7 @@ async function readJson(event: H3Event): Promise<unknown> {
 /** Logs what nobody foresaw once, under a number the person is given, and shows nothing of it. */
 function noteUnexpected(event: H3Event, error: unknown) {
   const requestId = randomUUID().slice(0, 8)
-  console.error(`[${requestId}] ${event.method} ${event.path.replace(/([?&]wall=|\/wall\/|\/calendar\/|\/reset\/|\/join\/)[^/&?]+/, '$1…')}`, error)
+  console.error(`[${requestId}] ${event.method} ${event.path.replace(/([?&]wall=|\/wall\/|\/calendar\/|\/sensor\/|\/reset\/|\/join\/)[^/&?]+/, '$1…')}`, error)
   return createError({ statusCode: 500, statusMessage: 'unexpected', message: refusals.unexpected(requestId), data: { reason: 'unexpected', message: refusals.unexpected(requestId), requestId } })
 }
 

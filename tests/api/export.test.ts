@@ -36,7 +36,7 @@ describe('the archive of a studio', () => {
     const files = await archive(owner)
     const db = new Sqlite(server.databaseFile, { readonly: true })
     const tables = db.prepare<[], { name: string }>(`select m.name from sqlite_master m where m.type = 'table' and exists (select 1 from pragma_table_info(m.name) where name = 'studio_id')`).all().map(row => row.name)
-    const doors = ['session', 'invitation', 'wall_link', 'calendar_link', 'bench_tablet', 'subscription', 'delivery']
+    const doors = ['session', 'invitation', 'wall_link', 'calendar_link', 'sensor_address', 'bench_tablet', 'subscription', 'delivery']
     expect(tables).toEqual(expect.arrayContaining(doors))
     for (const table of tables.filter(name => !doors.includes(name))) {
       const { count } = db.prepare<[], { count: number }>(`select count(*) as count from "${table}" where studio_id = 1`).get() ?? { count: -1 }

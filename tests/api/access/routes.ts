@@ -141,6 +141,11 @@ export const routes: Record<string, RouteCase> = {
   'batches/[id]/promise.post.ts': { least: 'maker', apart: 'row', at: 'batch', asLeast: 422, body: () => ({ dateAt: new Date(Date.now() + 5 * 86_400_000).toISOString(), orderName: 'Fair' }) },
   'acts/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ clientKey: clientKey(), kind: 'seen', doneAt: recently(), pieces: [{ id: rows.piece, version: 1 }], body: {} }) },
   'acts/[id]/correct.post.ts': { least: 'helper', apart: 'row', at: 'act', asLeast: 403, body: () => ({ clientKey: clientKey(), takeBack: true }) },
+  'rooms/[id]/sensor.get.ts': { least: 'maker', apart: 'row', at: 'room' },
+  'rooms/[id]/sensor.put.ts': { least: 'maker', apart: 'row', at: 'room' },
+  'rooms/[id]/sensor.delete.ts': { least: 'maker', apart: 'row', at: 'room', asLeast: 404 },
+  // A sensor's secret opens it to whoever holds it: that is what it is for. This one opens nothing.
+  'sensor/[token].post.ts': { least: 'anyone', apart: 'none', at: 'calendarToken', body: () => ({ humidity: 50 }) },
   'rooms/[id]/readings.get.ts': { least: 'helper', apart: 'row', at: 'room' },
   'rooms/[id]/readings.post.ts': { least: 'helper', apart: 'row', at: 'room', body: () => ({ clientKey: clientKey(), at: recently(), tempC: 19, rh: 0.5, words: null }) },
   'readings/[id].delete.ts': { least: 'helper', apart: 'row', at: 'reading', asLeast: 403 },

@@ -1,0 +1,20 @@
+/** A room's sensor address, on the Air page. */
+export const sensorWords = {
+  open: 'A sensor that tells the air here',
+  needs: '',
+  waiting: 'Looking whether this room has an address for a sensor.',
+  failed: 'Whether this room has an address for a sensor could not be looked up.',
+  intro: 'A sensor, or whatever reads it, sends its figures to a secret address by itself, at most once in half a minute. What says nothing new is not kept.',
+  how: 'It sends an HTTP POST with JSON or form fields: humidity in per cent, temperature in °C or temperature_f in °F, and time if it is not now.',
+  example: '{"temperature": 19.5, "humidity": 52}',
+  none: 'This room has no address for a sensor yet.',
+  make: 'Make an address',
+  again: 'Make a new address',
+  label: (room: string) => `Address of the sensor in ${room}`,
+  silent: (made: string) => `Made ${made}. Nothing has come yet.`,
+  heard: (when: string) => `Last heard ${when}.`,
+  refused: (when: string, why: string) => `What came ${when} could not be read: ${why}`,
+  end: 'End it',
+  endTitle: 'End the sensor’s address?',
+  endAsk: 'What the sensor sends is refused from then on. What it has told stays.',
+} as const
