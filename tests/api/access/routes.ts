@@ -143,7 +143,7 @@ export const routes: Record<string, RouteCase> = {
   'acts/[id]/correct.post.ts': { least: 'helper', apart: 'row', at: 'act', asLeast: 403, body: () => ({ clientKey: clientKey(), takeBack: true }) },
   'rooms/[id]/sensor.get.ts': { least: 'maker', apart: 'row', at: 'room' },
   'rooms/[id]/sensor.put.ts': { least: 'maker', apart: 'row', at: 'room' },
-  'rooms/[id]/sensor.delete.ts': { least: 'maker', apart: 'row', at: 'room', asLeast: 404 },
+  'rooms/[id]/sensor.delete.ts': { least: 'maker', apart: 'row', at: 'room' },
   // A sensor's secret opens it to whoever holds it: that is what it is for. This one opens nothing.
   'sensor/[token].post.ts': { least: 'anyone', apart: 'none', at: 'calendarToken', body: () => ({ humidity: 50 }) },
   'rooms/[id]/readings.get.ts': { least: 'helper', apart: 'row', at: 'room' },

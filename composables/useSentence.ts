@@ -1,0 +1,101 @@
+import { choicesOf, withChoice } from '#shared/sentence/card'
+import { readSentence } from '#shared/sentence/read'
+import type { Sentence } from '#shared/sentence/read'
+import { answeredAt } from '#shared/time'
+import type { TimeAnswer } from '#shared/time'
+import { controlWords } from '#shared/words/controls'
+import { sentenceWords, understoodText, wantedText } from '#shared/words/sentence'
+
+type PutOn = ReturnType<typeof usePutOn>
+type Reading = Extract<Sentence, { kind: 'reading' }>
+
+async function noteAir({ room, tempC, rh, words }: Reading, doneAt: number): Promise<string> {
+  const path: string = `/api/rooms/${room?.id}/readings`
+  await callApi<unknown>(path, { method: 'POST', body: { clientKey: newClientKey(), at: new Date(doneAt).toISOString(), tempC, rh, words } })
+  return sentenceWords.noted(room?.name ?? '')
+}
+
+/** The card: which sentence was read, what was chosen on it, and what it says so far. */
+function useCard(putOn: PutOn, mayPut: Ref<boolean>) {
+  const { studio } = putOn
+  const vocabulary = useVocabulary(putOn)
+  const units = computed(() => studio.state.value?.studio.units ?? 'metric')
+  const sentence = shallowRef<Sentence | null>(null)
+  const left = ref<number[]>([])
+  const chosenId = ref<number | null>(null)
+  const when = ref<TimeAnswer | null>(null)
+  const choices = computed(() => (sentence.value ? choicesOf(sentence.value, vocabulary.value.rooms) : []))
+  const settled = computed(() => sentence.value && withChoice(sentence.value, choices.value.find(each => each.id === chosenId.value) ?? null))
+  const reads = computed(() => {
+    const ids = sentence.value && 'pieceIds' in sentence.value ? sentence.value.pieceIds : []
+    return studio.pieces.value.filter(({ piece }) => ids.includes(piece.id))
+  })
+  const meant = computed(() => reads.value.filter(({ piece }) => !left.value.includes(piece.id)).map(({ piece }) => piece))
+  const says = computed(() => settled.value && understoodText(settled.value, meant.value.map(piece => piece.name), units.value))
+  const wanted = computed(() => settled.value && wantedText(settled.value, meant.value.length, mayPut.value))
+
+  function show(text: string) {
+    sentence.value = readSentence(text, vocabulary.value, studio.clock.value, units.value)
+    left.value = []
+    when.value = sentence.value?.when ?? null
+    const said = sentence.value
+    chosenId.value = said && (said.kind !== 'reading' || said.room) ? choices.value[0]?.id ?? null : null
+  }
+  return { sentence, left, chosenId, when, choices, settled, reads, meant, says, wanted, show }
+}
+
+/** One sentence from the words to the card and to what is told. What is put on is told by `putOn`, as its own page tells it. */
+export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>['say'], mayPut: Ref<boolean>) {
+  const { studio } = putOn
+  const text = ref('')
+  const problem = ref<string | null>(null)
+  const result = ref<string | null>(null)
+  const { busy, message, submit } = useSubmit()
+  const card = useCard(putOn, mayPut)
+
+  function read() {
+    result.value = null
+    const empty = text.value.trim() === ''
+    card.show(text.value)
+    problem.value = empty ? sentenceWords.empty : card.sentence.value ? null : sentenceWords.nothing
+    if (card.sentence.value?.kind === 'put on' && mayPut.value) fill()
+  }
+  /** The form below says the same, so that what was not understood is chosen there. */
+  function fill() {
+    putOn.chosen.value = card.meant.value.map(piece => piece.id)
+    if (card.chosenId.value !== null) putOn.materialId.value = card.chosenId.value
+    if (card.when.value) putOn.when.value = card.when.value
+  }
+  function drop() {
+    card.sentence.value = null
+    problem.value = null
+  }
+
+  async function tell(said: Sentence, doneAt: number): Promise<boolean> {
+    const pieces = card.meant.value
+    if (said.kind === 'reading') {
+      const noted = await submit(() => noteAir(said, doneAt))
+      result.value = noted
+      return noted !== null
+    }
+    if (said.kind === 'touch test') await say({ kind: 'touch test', body: { milestone: said.milestone, reached: said.reached }, pieces, doneAt })
+    else if (said.kind === 'moved') await say({ kind: 'moved', body: { placeId: said.place?.id }, pieces, doneAt })
+    else {
+      fill()
+      await putOn.done(putOn.parts.value.some(part => part.step !== null))
+    }
+    return true
+  }
+
+  async function note() {
+    const said = card.settled.value
+    const when = card.when.value
+    problem.value = card.wanted.value ?? (when === null ? controlWords.timeWanted : null)
+    if (!said || problem.value !== null || when === null || busy.value || putOn.busy.value) return
+    if (!await tell(said, answeredAt(when, studio.now.value))) return
+    text.value = ''
+    drop()
+  }
+
+  return { ...card, text, problem, result, message, busy, read, drop, note, studio }
+}

@@ -1,0 +1,62 @@
+import type { Token } from '#shared/sentence/tokens'
+import { addDays, fromLocal, localDate } from '#shared/time'
+import type { Clock, TimeAnswer } from '#shared/time'
+
+const minutesIn: Record<string, number> = { minute: 1, min: 1, hour: 60, h: 60 }
+
+/** "half an hour", "an hour and a half", "a quarter of an hour", "20 minutes", "2 hours", ending at this place: minutes, and where it begins. */
+function spanBefore(tokens: readonly Token[], end: number): { minutes: number, from: number } | null {
+  const said = (from: number) => tokens.slice(from, end).map(token => token.word).join(' ')
+  const phrases: [string, number][] = [['half an hour', 30], ['half hour', 30], ['a quarter of an hour', 15], ['quarter of an hour', 15], ['three quarter of an hour', 45], ['an hour and a half', 90], ['one hour and a half', 90], ['an hour', 60], ['a minute', 1], ['a couple of minute', 2], ['a few minute', 5]]
+  for (const [phrase, minutes] of phrases) {
+    const from = end - phrase.split(' ').length
+    if (from >= 0 && said(from) === phrase) return { minutes, from }
+  }
+  const unit = minutesIn[tokens[end - 1]?.word ?? '']
+  const number = tokens[end - 2]?.number ?? null
+  return unit !== undefined && number !== null ? { minutes: number * unit, from: end - 2 } : null
+}
+
+/** "14:20" or "14 20" is not a time by itself; "at 14:20" and "at 5" are. */
+function clockAt(tokens: readonly Token[], at: number): { minutes: number, length: number } | null {
+  const [, hours, minutes] = /^(\d{1,2}):(\d\d)$/.exec(tokens[at]?.said ?? '') ?? []
+  if (hours !== undefined && Number(hours) < 24 && Number(minutes) < 60) return { minutes: Number(hours) * 60 + Number(minutes), length: 1 }
+  const hour = tokens[at]?.number ?? null
+  if (hour === null || !Number.isInteger(hour) || hour > 23 || tokens[at - 1]?.word !== 'at') return null
+  const late = tokens[at + 1]?.word === 'pm' && hour < 12
+  return { minutes: (late ? hour + 12 : hour) * 60, length: ['pm', 'am', 'o\'clock'].includes(tokens[at + 1]?.word ?? '') ? 2 : 1 }
+}
+
+/** A wall time that lies behind: today's, or yesterday's when today's is still to come or "yesterday" was said. */
+function lastTime(minutes: number, yesterday: boolean, { now, zone }: Clock): number {
+  const today = localDate(now, zone)
+  const at = fromLocal(today, minutes, zone)
+  return yesterday || at > now ? fromLocal(addDays(today, -1), minutes, zone) : at
+}
+
+/**
+ * When a sentence says it was, and takes those words out of it; now when it says nothing.
+ * @param tokens changed: what was understood is taken out
+ */
+export function takeWhen(tokens: Token[], clock: Clock): TimeAnswer {
+  const ago = tokens.findIndex(token => token.word === 'ago')
+  const span = ago < 0 ? null : spanBefore(tokens, ago)
+  if (span) {
+    const begin = ['about', 'some', 'around'].includes(tokens[span.from - 1]?.word ?? '') ? span.from - 1 : span.from
+    tokens.splice(begin, ago + 1 - begin)
+    return { kind: 'ago', minutes: Math.round(span.minutes) }
+  }
+  for (let at = 0; at < tokens.length; at += 1) {
+    const found = clockAt(tokens, at)
+    if (!found) continue
+    const day = tokens.findIndex(token => token.word === 'yesterday')
+    const from = ['at', 'since'].includes(tokens[at - 1]?.word ?? '') ? at - 1 : at
+    tokens.splice(from, at + found.length - from)
+    const left = tokens.findIndex(token => token.word === 'yesterday')
+    if (left >= 0) tokens.splice(left, 1)
+    return { kind: 'at', at: lastTime(found.minutes, day >= 0, clock) }
+  }
+  const just = tokens.findIndex(token => token.word === 'now')
+  if (just >= 0) tokens.splice(tokens[just - 1]?.word === 'just' ? just - 1 : just, tokens[just - 1]?.word === 'just' ? 2 : 1)
+  return { kind: 'ago', minutes: 0 }
+}

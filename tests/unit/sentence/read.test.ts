@@ -1,0 +1,99 @@
+import { describe, expect, it } from 'vitest'
+import { readSentence } from '#shared/sentence/read'
+import type { Sentence, Vocabulary } from '#shared/sentence/read'
+import { studioZone } from '#shared/time'
+
+const zone = studioZone('Europe/London')
+// Wednesday 10 June 2026, 15:00 in London.
+const clock = { now: Date.UTC(2026, 5, 10, 14), zone }
+const vocabulary: Vocabulary = {
+  materials: [{ id: 1, name: 'White acrylic gesso' }, { id: 2, name: 'Black acrylic gesso' }, { id: 3, name: 'Water-borne varnish' }, { id: 4, name: 'Wood glue, PVA' }],
+  pieces: [
+    ...[1, 2, 3, 4, 5, 6].map(no => ({ id: no, name: `Ledger ${no}`, batch: 'Autumn ledgers' })),
+    { id: 11, name: 'Tide box 1', batch: 'Tide boxes' }, { id: 12, name: 'Tide box 2', batch: 'Tide boxes' },
+    { id: 13, name: 'Lantern box 1', batch: 'Lantern boxes' }, { id: 14, name: 'Clock case', batch: 'Clock case' },
+  ],
+  places: [{ id: 21, name: 'Long shelf', pieceIds: [1, 2, 14] }, { id: 22, name: 'Yard rail', pieceIds: [] }],
+  rooms: [{ id: 31, name: 'Bench room' }, { id: 32, name: 'Shed' }],
+}
+const read = (text: string) => readSentence(text, vocabulary, clock, 'metric')
+type PutOn = Extract<Sentence, { kind: 'put on' }>
+const putOn = (text: string) => read(text) as PutOn
+
+describe('something put on', () => {
+  it('is read with its pieces and its time', () => {
+    expect(read('White gesso on ledgers one to four, twenty minutes ago')).toEqual({
+      kind: 'put on', material: { id: 1, name: 'White acrylic gesso', others: [] }, pieceIds: [1, 2, 3, 4], when: { kind: 'ago', minutes: 20 }, unknown: [],
+    })
+  })
+  it('keeps what else a short name may have meant, the last used first', () => {
+    expect(putOn('gesso on ledger 2').material).toEqual({ id: 1, name: 'White acrylic gesso', others: [{ id: 2, name: 'Black acrylic gesso' }] })
+  })
+  it.each<[string, number[]]>([
+    ['varnish on ledgers 1, 2 and 5', [1, 2, 5]],
+    ['varnish on ledgers 2-4', [2, 3, 4]],
+    ['varnish on ledgers one through three and the clock case', [1, 2, 3, 14]],
+    ['varnish on all ledgers but 3', [1, 2, 4, 5, 6]],
+    ['varnish on the ledgers except 1 and 6', [2, 3, 4, 5]],
+    ['varnish on autumn ledgers', [1, 2, 3, 4, 5, 6]],
+    ['varnish on the tide boxes', [11, 12]],
+    ['varnish on everything on the long shelf', [1, 2, 14]],
+    ['I varnished nothing but put varnish on tide box two', [12]],
+  ])('%s', (text, ids) => expect(putOn(text).pieceIds).toEqual(ids))
+  it('does not guess between things that are called alike', () => {
+    expect(putOn('varnish on the boxes')).toMatchObject({ pieceIds: [], unknown: ['boxes'] })
+  })
+  it('says which words it did not understand', () => {
+    expect(putOn('varnish on ledgers 1 to 3 with the wide brush').unknown).toEqual(['wide', 'brush'])
+    expect(putOn('varnish on ledger 9')).toMatchObject({ pieceIds: [], unknown: ['9'] })
+    expect(putOn('varnish on ledgers 5 to 8')).toMatchObject({ pieceIds: [5, 6], unknown: ['8'] })
+  })
+  it('understands nothing of what is not about the studio', () => {
+    expect(read('what is for lunch')).toBeNull()
+    expect(read('')).toBeNull()
+  })
+})
+
+describe('when', () => {
+  const when = (text: string) => putOn(`varnish on ledger 1 ${text}`)
+  it.each<[string, number]>([['', 0], ['just now', 0], ['half an hour ago', 30], ['an hour and a half ago', 90], ['about 40 min ago', 40], ['two hours ago', 120], ['forty five minutes ago', 45], ['a quarter of an hour ago', 15]])('"%s"', (text, minutes) => {
+    expect(when(text)).toMatchObject({ when: { kind: 'ago', minutes }, unknown: [], pieceIds: [1] })
+  })
+  // London is an hour ahead of UTC in June.
+  it.each<[string, number]>([['at 14:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 2 pm', Date.UTC(2026, 5, 10, 13)], ['at 9 o\'clock', Date.UTC(2026, 5, 10, 8)], ['at 17:40', Date.UTC(2026, 5, 9, 16, 40)], ['yesterday at 9:30', Date.UTC(2026, 5, 9, 8, 30)]])('"%s"', (text, at) => {
+    expect(when(text)).toMatchObject({ when: { kind: 'at', at }, unknown: [] })
+  })
+})
+
+describe('a touch test', () => {
+  it.each<[string, object]>([
+    ['ledgers 1 and 2 are still tacky', { milestone: 'tack-free', reached: false, pieceIds: [1, 2] }],
+    ['ledger 3 is dry to the touch', { milestone: 'set-to-touch', reached: true, pieceIds: [3] }],
+    ['clock case not dry to handle', { milestone: 'dry-to-handle', reached: false, pieceIds: [14] }],
+    ['tide boxes no longer tacky', { milestone: 'tack-free', reached: true, pieceIds: [11, 12] }],
+    ['the ledgers are ready to sand', { milestone: 'dry-to-sand-lightly', reached: true, pieceIds: [1, 2, 3, 4, 5, 6] }],
+    ['everything on the long shelf is dry', { milestone: 'dry-to-handle', reached: true, pieceIds: [1, 2, 14] }],
+  ])('%s', (text, said) => expect(read(text)).toMatchObject({ kind: 'touch test', unknown: [], ...said }))
+})
+
+describe('pieces moved', () => {
+  it('go to the place that is named', () => {
+    expect(read('moved ledgers 1 to 3 to the yard rail ten minutes ago')).toMatchObject({ kind: 'moved', pieceIds: [1, 2, 3], place: { id: 22 }, when: { kind: 'ago', minutes: 10 }, unknown: [] })
+    expect(read('I carried the clock case outside')).toMatchObject({ kind: 'moved', pieceIds: [14], place: null, unknown: ['outside'] })
+  })
+})
+
+describe('the air of a room', () => {
+  it.each<[string, object]>([
+    ['shed 14 degrees 70 percent', { room: { id: 32 }, tempC: 14, rh: 0.7, words: null }],
+    ['bench room: 19.5 °C, 52 %', { room: { id: 31 }, tempC: 19.5, rh: 0.52 }],
+    ['the shed is fourteen point five degrees and sixty one per cent', { room: { id: 32 }, tempC: 14.5, rh: 0.61 }],
+    ['shed minus two degrees', { room: { id: 32 }, tempC: -2, rh: null }],
+    ['shed 50 degrees fahrenheit 80%', { room: { id: 32 }, tempC: 10, rh: 0.8 }],
+    ['the shed is damp', { room: { id: 32 }, tempC: null, rh: null, words: 'damp' }],
+    ['55 percent', { room: null, rh: 0.55 }],
+  ])('%s', (text, said) => expect(read(text)).toMatchObject({ kind: 'reading', unknown: [], ...said }))
+  it('is in Fahrenheit where the studio reckons in it', () => {
+    expect(readSentence('shed 68 degrees', vocabulary, clock, 'us')).toMatchObject({ tempC: 20 })
+  })
+})
