@@ -6,6 +6,7 @@ import { pieceStates } from '~~/server/services/piece-states'
 import { mayHandle } from '~~/server/services/handling'
 import { refuseByCaution } from '~~/server/services/act-cautions'
 import { makeBatch, refuseRegroup } from '~~/server/services/regroup'
+import { hiddenFrom } from '~~/server/services/private-materials'
 import { noteStart } from '~~/server/services/vapour-starts'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, conflict, impossible, isRefusal, malformed, notAllowed } from '~~/server/utils/errors'
@@ -100,7 +101,7 @@ function findRefusal(tx: Transaction, studioId: number, teller: Teller, request:
   if (request.pieces.some(each => pieces.find(row => row.id === each.id)?.version !== each.version)) return conflict(actRefusals.somebodyElse, pieceStates(tx, studioId, pieces.map(each => each.id)))
   return checkTime(Date.parse(request.doneAt), now)
     ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
-    ?? checkReferences(tx, studioId, body)
+    ?? checkReferences(tx, studioId, body, 'member' in teller && may(teller.member.role, 'see private mixes'))
     ?? (request.kind === 'regrouped' ? refuseRegroup(tx, studioId, pieces.map(each => each.id), body) : null)
     ?? refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
 }
@@ -137,11 +138,12 @@ function kindOfStep(tx: Transaction, studioId: number, kind: TellableKind, body:
   return named?.kind ?? (kind === 'glue-up on' || kind === 'it is out' ? 'glue-up' : 'coat')
 }
 
-function checkReferences(tx: Transaction, studioId: number, body: Record<string, unknown>): Refusal | null {
+function checkReferences(tx: Transaction, studioId: number, body: Record<string, unknown>, seesPrivate: boolean): Refusal | null {
   const { placeId, materialVersionId } = body
   if (typeof placeId === 'number' && !tx.select({ id: place.id }).from(place).where(owned(place, studioId, placeId)).get()) return malformed({ placeId: actRefusals.noPlace })
-  if (typeof materialVersionId === 'number' && !tx.select({ id: materialVersion.id }).from(materialVersion).where(owned(materialVersion, studioId, materialVersionId)).get()) return malformed({ materialVersionId: actRefusals.noMaterial })
-  return null
+  if (typeof materialVersionId !== 'number') return null
+  const version = tx.select({ materialId: materialVersion.materialId }).from(materialVersion).where(owned(materialVersion, studioId, materialVersionId)).get()
+  return version && !hiddenFrom(tx, studioId, seesPrivate).has(version.materialId) ? null : malformed({ materialVersionId: actRefusals.noMaterial })
 }
 
 /** The parts an act is about with the instant of each: those named, those of the step, or all that are not joined to another. */

@@ -1,5 +1,6 @@
 import { and, asc, desc, eq, inArray } from 'drizzle-orm'
 import { audit, benchSpeed, coat, material, materialFigure, materialVersion, room, studio, tin, touchTest } from '~~/db/schema'
+import { hiddenFrom } from '~~/server/services/private-materials'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -30,7 +31,8 @@ function newestVersion(db: Database | Transaction, studioId: number, materialId:
 }
 
 /** What this studio's touch tests teach about a material's newest edition. */
-export function learnedPart(db: Database, studioId: number, materialId: number, now: number): LearnedWire | Refusal {
+export function learnedPart(db: Database, studioId: number, materialId: number, now: number, seesPrivate = true): LearnedWire | Refusal {
+  if (hiddenFrom(db, studioId, seesPrivate).has(materialId)) return absent()
   const versionId = newestVersion(db, studioId, materialId)
   const sheet = versionId === null ? undefined : dryingMaterials(db, studioId, [versionId]).get(versionId)
   if (versionId === null || !sheet) return absent()

@@ -1,5 +1,6 @@
 import { asc, desc, eq, isNotNull, isNull, sql } from 'drizzle-orm'
 import { coat, material, materialVersion } from '~~/db/schema'
+import { hiddenFrom } from '~~/server/services/private-materials'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import type { RecentMaterialsWire, RecentMaterialWire } from '#shared/schemas/material'
@@ -13,11 +14,12 @@ const common = ['acrylic-gesso', 'acrylic-varnish', 'pva-bookbinding', 'heavy-bo
  * The materials for the big keys: those used last in this studio, newest first, filled up with what is in common use.
  * At most six, each in its newest edition, whichever edition was used; the others follow by name.
  */
-export function recentMaterials(db: Database, studioId: number): RecentMaterialsWire {
+export function recentMaterials(db: Database, studioId: number, seesPrivate: boolean): RecentMaterialsWire {
+  const hidden = hiddenFrom(db, studioId, seesPrivate)
   const used = db.select({ materialId: materialVersion.materialId }).from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId))
     .where(scoped(coat, studioId, isNotNull(coat.materialVersionId), isNull(coat.strippedAt)))
     .groupBy(materialVersion.materialId).orderBy(desc(sql`max(${coat.endedAt})`)).limit(keys).all().map(row => row.materialId)
-  const editions = newestEditions(db, studioId)
+  const editions = newestEditions(db, studioId).filter(row => !hidden.has(row.materialId))
   const rank = (materialId: number, key: string | null) => {
     if (used.includes(materialId)) return used.indexOf(materialId)
     return keys + (key !== null && common.includes(key) ? common.indexOf(key) : common.length)

@@ -3,6 +3,7 @@ import { cause, keepOut, material, materialVersion, member, person, ragDuty, rem
 import { cautionsOf, cautionsWith } from '~~/server/services/cautions'
 import { reshutMs } from '~~/server/services/keep-outs'
 import { memberNames } from '~~/server/services/member-names'
+import { hiddenFrom } from '~~/server/services/private-materials'
 import type { Membership } from '~~/server/services/sessions'
 import { exhaustRuns, openStarts } from '~~/server/services/vapour-facts'
 import type { StartRow } from '~~/server/services/vapour-facts'
@@ -26,15 +27,16 @@ export function vapourState(db: Database, studioId: number, who: Membership, now
   const names = memberNames(db, studioId)
   const starts = startStates(db, studioId, openStarts(db, studioId), names)
   const lines = keepOuts(db, studioId, now)
+  const hidden = hiddenFrom(db, studioId, may(who.role, 'see private mixes'))
   return {
     at: now,
     rooms: rows.map(row => roomState(row, rows, { read, planned, names, starts, lines, who })),
     rags: db.select({ id: ragDuty.id, room: room.name, sinceAt: ragDuty.lastOilAt, answer: ragDuty.answer }).from(ragDuty).innerJoin(room, eq(room.id, ragDuty.roomId)).where(scoped(ragDuty, studioId, isNull(ragDuty.answeredAt))).orderBy(asc(ragDuty.lastOilAt)).all(),
-    cautions: standingCautions(db, studioId),
+    cautions: standingCautions(db, studioId, hidden),
     rules: db.select({ id: studioRule.id, text: studioRule.text, memberId: studioRule.memberId }).from(studioRule).where(scoped(studioRule, studioId, isNull(studioRule.withdrawnAt))).orderBy(asc(studioRule.id)).all()
       .map(({ memberId, ...rule }) => ({ ...rule, by: names.get(memberId) ?? '' })),
     statement: statementOf(db, studioId, names),
-    materials: limitStates(db, studioId, [...read.wet.values(), ...planned.values()].flat()),
+    materials: limitStates(db, studioId, hidden, [...read.wet.values(), ...planned.values()].flat()),
     unsized: unsized(db, studioId, now),
   }
 }
@@ -88,10 +90,10 @@ function startStates(db: Database, studioId: number, starts: Map<number, StartRo
 }
 
 /** The cautions of everything the studio has on its shelves, each once. */
-function standingCautions(db: Database, studioId: number): VapourState['cautions'] {
+function standingCautions(db: Database, studioId: number, hidden: ReadonlySet<number>): VapourState['cautions'] {
   const rows = db.select({ id: material.id, name: material.name, cautions: materialVersion.cautions, solvent: materialVersion.solvent, solventKey: vapourLimit.solventKey }).from(material).innerJoin(materialVersion, eq(materialVersion.materialId, material.id)).leftJoin(vapourLimit, eq(vapourLimit.materialId, material.id))
     .where(scoped(material, studioId, isNull(material.archivedAt))).orderBy(asc(material.name), asc(materialVersion.no)).all()
-  const newest = [...new Map(rows.map(row => [row.id, row])).values()].map(row => ({ ...row, cautions: cautionsWith(row) }))
+  const newest = [...new Map(rows.map(row => [row.id, row])).values()].filter(row => !hidden.has(row.id)).map(row => ({ ...row, cautions: cautionsWith(row) }))
   return [...['phones', 'paint stripper'].map(key => ({ key, materials: [] })), ...cautionsOf(newest)].flatMap(({ key, materials }) => {
     const known = findCaution(key)
     return known ? [{ key: known.key, materials }] : []
@@ -104,10 +106,10 @@ function statementOf(db: Database, studioId: number, names: Map<number, string>)
 }
 
 /** Materials that give off solvent with what the owner read in their sheets; those in use first. */
-function limitStates(db: Database, studioId: number, coats: readonly NamedCoat[]): VapourState['materials'] {
+function limitStates(db: Database, studioId: number, hidden: ReadonlySet<number>, coats: readonly NamedCoat[]): VapourState['materials'] {
   const rows = db.select({ materialId: material.id, name: material.name, solvent: materialVersion.solvent, sheet: vapourLimit }).from(material).innerJoin(materialVersion, eq(materialVersion.materialId, material.id))
     .leftJoin(vapourLimit, eq(vapourLimit.materialId, material.id)).where(scoped(material, studioId, isNull(material.archivedAt))).orderBy(asc(material.name), asc(materialVersion.no)).all()
-  const newest = [...new Map(rows.map(row => [row.materialId, row])).values()].filter(row => isSolventBorne(row.solvent) || row.sheet !== null)
+  const newest = [...new Map(rows.map(row => [row.materialId, row])).values()].filter(row => !hidden.has(row.materialId) && (isSolventBorne(row.solvent) || row.sheet !== null))
   const used = new Set(coats.map(each => each.material))
   return newest.map(({ materialId, name, solvent, sheet }) => ({
     materialId, name, solvent, used: used.has(name),

@@ -1,8 +1,9 @@
 import type { FigureName } from '#shared/library/types'
-import type { Driver, MilestoneName, SourceKey } from '#shared/terms'
+import type { Content } from '#shared/library/required-cautions'
+import type { Driver, MilestoneName, MixBasis, SourceKey } from '#shared/terms'
 
-/** A material in the list: what it is and, in sheet minutes, when the next coat may go on (a joint: when it is out of clamps). */
-export interface MaterialWire { id: number, name: string, kind: string, glue: boolean, solvent: string, next: { name: MilestoneName, low: number, typical: number, high: number } | null }
+/** A material in the list: what it is, whether the studio has made it its own, and, in sheet minutes, when the next coat may go on (a joint: when it is out of clamps). */
+export interface MaterialWire { id: number, name: string, kind: string, glue: boolean, solvent: string, own: boolean, mix: boolean, next: { name: MilestoneName, low: number, typical: number, high: number } | null }
 
 interface Sourced { source: string, key: SourceKey }
 
@@ -33,6 +34,18 @@ export interface MaterialSheetWire {
   cautions: CautionWire[]
   under: SystemWire[]
   over: SystemWire[]
-  parts: { name: string, parts: number }[]
+  /** Whether its figures are the studio's own; whether it came with the starter library; whether it has been put away. */
+  own: boolean
+  starter: boolean
+  putAway: boolean
+  /** What it was declared to hold, and its hazards in the studio's own words. */
+  contents: Content[]
+  hazards: string
+  basis: MixBasis | null
+  parts: { materialId: number, name: string, parts: number, private: boolean }[]
   hiddenParts: number
+  files: SheetFileWire[]
 }
+
+/** A data sheet that is kept with a material: since which edition, and how large. */
+export interface SheetFileWire { id: number, name: string, bytes: number, edition: number, addedAt: string | null }

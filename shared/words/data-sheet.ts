@@ -53,6 +53,8 @@ export const sheetRefusals = {
   noEdition: 'There is no edition of that number.',
   sameEdition: 'That is the edition in use.',
   nothing: 'Nothing was changed.',
+  asked: (name: string) => `A finishing schedule asks for ${name}. Change the schedule first.`,
+  wentBack: (no: number) => `Back to edition ${no}`,
   archived: 'It has been put away. Bring it back first.',
 } as const
 

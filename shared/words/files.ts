@@ -25,3 +25,20 @@ export const fileRefusals = {
   unknownType: (wanted: readonly FileType[]) => `What is in this file is none we know, whatever its name says. It must be ${oneOf(wanted)}.`,
   lost: 'The file itself is no longer in the storage folder. Put it back from a backup, or add it again.',
 } as const
+
+export const sheetFileWords = {
+  title: 'Data sheets kept here',
+  none: 'No data sheet is kept with this material yet.',
+  unnamed: 'Data sheet',
+  add: 'Add a data sheet',
+  hint: 'A PDF, or a JPEG or PNG picture of it, up to 20 MB.',
+  adding: 'Keeping the file',
+  added: (name: string) => `${name} is kept.`,
+  read: (name: string) => `Read ${name}`,
+  remove: 'Take away',
+  removeOne: (name: string) => `Take away ${name}`,
+  removeAsk: (name: string) => `Take ${name} away?`,
+  removeSays: 'The file is deleted. Its figures stay as they are.',
+  since: (edition: number, size: string) => `with edition ${edition}, ${size}`,
+  many: (most: number) => `A material has at most ${most} data sheets. Take one away first.`,
+} as const

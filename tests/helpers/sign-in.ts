@@ -10,6 +10,8 @@ export interface Visitor {
   put: <T = unknown>(path: string, body?: unknown) => Promise<Answer<T>>
   patch: <T = unknown>(path: string, body?: unknown) => Promise<Answer<T>>
   delete: <T = unknown>(path: string) => Promise<Answer<T>>
+  /** A file as the whole body. */
+  upload: <T = unknown>(path: string, data: Uint8Array) => Promise<Answer<T>>
   send: <T = unknown>(method: string, path: string, body?: unknown, headers?: Record<string, string>) => Promise<Answer<T>>
   /** `name=value`, or '' before the first sign-in. */
   cookie: () => string
@@ -20,9 +22,10 @@ export function visitor(origin: string): Visitor {
   let cookie = ''
   async function send<T>(method: string, path: string, body?: unknown, headers: Record<string, string> = {}): Promise<Answer<T>> {
     const sent = new Headers({ accept: 'application/json', ...headers })
-    if (body !== undefined) sent.set('content-type', 'application/json')
+    const file = body instanceof Uint8Array
+    if (body !== undefined) sent.set('content-type', file ? 'application/octet-stream' : 'application/json')
     if (cookie) sent.set('cookie', cookie)
-    const response = await fetch(origin + path, { method, redirect: 'manual', headers: sent, body: body === undefined ? undefined : JSON.stringify(body) })
+    const response = await fetch(origin + path, { method, redirect: 'manual', headers: sent, body: body === undefined ? undefined : file ? new Uint8Array(body) : JSON.stringify(body) })
     const given = response.headers.getSetCookie().find(line => line.startsWith('stillwet='))?.split(';')[0]
     if (given !== undefined) cookie = given
     const text = await response.text()
@@ -32,7 +35,7 @@ export function visitor(origin: string): Visitor {
   return {
     send, cookie: () => cookie,
     get: path => send('GET', path), post: (path, body = {}, headers) => send('POST', path, body, headers),
-    put: (path, body) => send('PUT', path, body), patch: (path, body) => send('PATCH', path, body), delete: path => send('DELETE', path),
+    put: (path, body) => send('PUT', path, body), upload: (path, data) => send('POST', path, data), patch: (path, body) => send('PATCH', path, body), delete: path => send('DELETE', path),
   }
 }
 

@@ -1,4 +1,4 @@
-import { pushSubscription, roomOf } from './rows'
+import { pushSubscription, roomOf, sheetOf } from './rows'
 import type { Rows } from './rows'
 import type { Role } from '#shared/terms'
 
@@ -89,6 +89,21 @@ export const routes: Record<string, RouteCase> = {
   'materials/[id]/learned.get.ts': { least: 'helper', apart: 'row', at: 'material' },
   'materials/[id]/reset.post.ts': { least: 'maker', apart: 'row', at: 'material', body: () => ({ forget: true }) },
   'materials/[id]/tin.post.ts': { least: 'maker', apart: 'row', at: 'material' },
+  'materials/index.post.ts': { least: 'maker', apart: 'view', body: () => sheetOf('Loft varnish') },
+  'materials/preview.post.ts': { least: 'maker', apart: 'view', body: () => sheetOf('Loft varnish') },
+  'materials/[id].patch.ts': { least: 'maker', apart: 'row', at: 'ownMaterial', body: () => ({ putAway: false }) },
+  'materials/[id]/editions.get.ts': { least: 'helper', apart: 'row', at: 'material' },
+  // Nothing is typed: who may is told that a material has at least one time.
+  'materials/[id]/editions.post.ts': { least: 'maker', apart: 'row', at: 'ownMaterial', asLeast: 400, body: () => ({ basedOn: 1, note: '', solvent: 'water', contents: [], mustLieLevel: false, gloves: false, hazards: '', rungs: [], windows: [], figures: [] }) },
+  // The edition in use: who may is told so.
+  'materials/[id]/back.post.ts': { least: 'maker', apart: 'row', at: 'ownMaterial', asLeast: 400, body: () => ({ no: 1, basedOn: 1 }) },
+  'materials/[id]/mix.post.ts': { least: 'maker', apart: 'row', at: 'mix', body: rows => ({ basedOn: 1, basis: 'weight', parts: [{ materialId: rows.ownMaterial, parts: 1, private: true }, { materialId: rows.material, parts: 1, private: false }] }) },
+  'mixes/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ name: 'Loft mix', basis: 'weight', parts: [{ materialId: rows.ownMaterial, parts: 3, private: false }, { materialId: rows.material, parts: 1, private: true }] }) },
+  // What is sent is no data sheet: who may is told so.
+  'attachments/data-sheets/[id].post.ts': { least: 'maker', apart: 'row', at: 'ownMaterial', asLeast: 400, body: () => ({}) },
+  // It hangs on a private part: it is not there for a helper.
+  'attachments/data-sheets/[id].get.ts': { least: 'helper', apart: 'row', at: 'sheetFile', asLeast: 404 },
+  'attachments/data-sheets/[id].delete.ts': { least: 'maker', apart: 'row', at: 'sheetFile' },
   'coats/[id]/advice.post.ts': { least: 'helper', apart: 'row', at: 'coat', body: () => ({ code: 'blush', answer: 'going on' }) },
   'plan/index.get.ts': { least: 'helper', apart: 'view' },
   // A time that has gone by: who may is told so.

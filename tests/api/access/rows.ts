@@ -7,9 +7,12 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, turn: number, pin: number, subscription: number, material: number, invitationToken: string, calendarToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
+
+/** The least that a data sheet must say. */
+export const sheetOf = (name: string, more: object = {}) => ({ name, kind: 'varnish', hardening: 'water', solvent: null, contents: [], mustLieLevel: false, gloves: false, hazards: '', figures: { 'ready-to-recoat': '2-4 h' }, ...more })
 
 const made = async (who: Visitor, path: string, body: unknown) => {
   const answer = await who.post<{ id: number, path: string, invitation: { id: number } }>(path, body)
@@ -78,11 +81,15 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   if (!schedule) throw new Error('The first studio has no finishing schedule.')
   const [material] = (await owner.get<{ id: number }[]>('/api/materials')).body
   if (!material) throw new Error('The first studio has no material.')
+  const own = await made(owner, '/api/materials', sheetOf(`${marker} varnish`))
+  const mix = await made(owner, '/api/mixes', { name: `${marker} mix`, basis: 'volume', parts: [{ materialId: own.id, parts: 2, private: true }, { materialId: material.id, parts: 1, private: false }] })
+  const file = await owner.upload<{ id: number }>(`/api/attachments/data-sheets/${own.id}?name=${marker}.pdf`, new TextEncoder().encode(`%PDF-1.7 ${marker}`))
+  if (file.status !== 200) throw new Error(`The data sheet was answered with ${file.status}: ${JSON.stringify(file.body)}`)
   const calls = writeCalls(databaseFile, room.id, seen.body.actId, piece)
   const planned = await owner.post<{ batchId: number }>('/api/batches', { clientKey: 'access-planned-batch', name: `${marker} bowls`, scheduleId: schedule.id, pieces: [`${marker} bowl`], placeId: place.id, order: null, startsAt: now() })
   const pinned = writePin(databaseFile, planned.body.batchId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */

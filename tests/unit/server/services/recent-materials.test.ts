@@ -26,7 +26,7 @@ function withCoats(keys: string[]) {
 describe('the materials on the big keys', () => {
   it('are those in common use while nothing has been put on', () => {
     const { db, studioId } = withCoats([])
-    const { recent, others } = recentMaterials(db, studioId)
+    const { recent, others } = recentMaterials(db, studioId, true)
     expect(recent.map(each => each.name).slice(0, 2)).toEqual(['Acrylic gesso', 'Acrylic varnish'])
     expect(recent).toHaveLength(6)
     expect(others.some(each => recent.some(one => one.versionId === each.versionId))).toBe(false)
@@ -34,7 +34,7 @@ describe('the materials on the big keys', () => {
 
   it('are the last used first, each once, filled up with the common ones', () => {
     const { db, studioId, materialOf } = withCoats(['wax', 'shellac', 'wax', 'bole'])
-    const { recent } = recentMaterials(db, studioId)
+    const { recent } = recentMaterials(db, studioId, true)
     // In the order of their last coats: bole 5 min ago, wax 10, shellac 15.
     expect(recent.slice(0, 3).map(each => each.versionId)).toEqual(['bole', 'wax', 'shellac'].map(materialOf))
     expect(new Set(recent.map(each => each.versionId)).size).toBe(6)
@@ -42,7 +42,7 @@ describe('the materials on the big keys', () => {
 
   it('belong to the studio that asks', () => {
     const { db, studioId } = withCoats(['wax'])
-    expect(recentMaterials(db, studioId + 1)).toEqual({ recent: [], others: [] })
+    expect(recentMaterials(db, studioId + 1, true)).toEqual({ recent: [], others: [] })
   })
 })
 
