@@ -8,10 +8,13 @@ import { answeredAt } from '#shared/time'
 import type { TimeAnswer } from '#shared/time'
 import { holdWords, putOnWords, sizeWords } from '#shared/words/put-on'
 
+/** The pieces that another page has chosen already, such as those of a shelf whose tag was read. */
+const askedPieces = (query: unknown) => typeof query === 'string' ? query.split(',').map(Number).filter(id => Number.isInteger(id) && id > 0) : []
+
 /** Everything "I put something on" remembers between its taps, and the telling at the end. */
 export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling>, materials: Ref<RecentMaterialsWire | null>) {
   const materialId = ref<number | null>(null)
-  const chosen = ref<number[]>([])
+  const chosen = ref<number[]>(askedPieces(useRoute().query.pieces))
   const when = ref<TimeAnswer | null>({ kind: 'ago', minutes: 0 })
   const size = ref<CoatSize | null>('normal')
   const hold = ref<Hold | 'free' | null>('free')

@@ -20,9 +20,9 @@ export function useSession() {
   }
 
   /** Turns to another of one's studios; everything on the page belongs to the old one, so it is loaded anew. */
-  async function turnTo(studioId: number) {
+  async function turnTo(studioId: number, path = '/') {
     await callApi('/api/auth/studio', { method: 'POST', body: { studioId } })
-    reloadNuxtApp({ path: '/', force: true })
+    reloadNuxtApp({ path, force: true })
   }
 
   /** Whether a control is worth offering; the server decides again. */

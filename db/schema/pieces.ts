@@ -119,6 +119,7 @@ export const stay = sqliteTable('stay', {
   unique().on(t.partId, t.fromActId),
   uniqueIndex('stay_now').on(t.partId).where(sql`${t.toAt} is null`),
   index('stay_in_place_now').on(t.placeId).where(sql`${t.toAt} is null`),
+  index('stay_on_carrier').on(t.carrierId).where(sql`${t.carrierId} is not null`),
   check('stay_span', sql`${t.toAt} is null or ${t.toAt} >= ${t.fromAt}`),
 ])
 

@@ -37,8 +37,10 @@ export const place = sqliteTable('place', {
   kind: text('kind').$type<PlaceKind>().notNull(),
   capacity: integer('capacity').notNull(),
   sort: integer('sort').notNull().default(0),
+  /** What its tag says; null until it has one. No carrier of the studio has the same. */
+  code: text('code'),
 }, t => [
-  studioKey(t), within(t, t.roomId, room), unique().on(t.roomId, t.name), oneOf('place_kind', t.kind, placeKinds),
+  studioKey(t), within(t, t.roomId, room), unique().on(t.roomId, t.name), unique().on(t.studioId, t.code), oneOf('place_kind', t.kind, placeKinds),
   check('place_capacity', sql`${t.capacity} > 0`), index('place_of_studio').on(t.studioId, t.sort),
 ])
 
@@ -48,7 +50,7 @@ export const carrier = sqliteTable('carrier', {
   studioId: studioColumn(),
   code: text('code').notNull(),
   name: text('name').notNull(),
-}, t => [studioKey(t), unique().on(t.studioId, t.code)])
+}, t => [studioKey(t), unique().on(t.studioId, t.code), unique().on(t.studioId, t.name)])
 
 /** A logger's file that was brought in: its readings come together and are taken back together. `lines` counts the readings it added. */
 export const readingImport = sqliteTable('reading_import', {

@@ -1,5 +1,5 @@
 import { and, asc, eq, inArray } from 'drizzle-orm'
-import { act, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
+import { act, carrier, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
@@ -23,6 +23,7 @@ import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import { describeIssues } from '#shared/schemas/describe'
 import type { StepKind } from '#shared/terms'
 import { actRefusals } from '#shared/words/acts'
+import { tagRefusals } from '#shared/words/tags'
 import type { ProblemCode } from '#shared/work/types'
 
 const minute = 60_000
@@ -139,8 +140,9 @@ function kindOfStep(tx: Transaction, studioId: number, kind: TellableKind, body:
 }
 
 function checkReferences(tx: Transaction, studioId: number, body: Record<string, unknown>, seesPrivate: boolean): Refusal | null {
-  const { placeId, materialVersionId } = body
+  const { placeId, carrierId, materialVersionId } = body
   if (typeof placeId === 'number' && !tx.select({ id: place.id }).from(place).where(owned(place, studioId, placeId)).get()) return malformed({ placeId: actRefusals.noPlace })
+  if (typeof carrierId === 'number' && !tx.select({ id: carrier.id }).from(carrier).where(owned(carrier, studioId, carrierId)).get()) return malformed({ carrierId: tagRefusals.carrierAbsent })
   if (typeof materialVersionId !== 'number') return null
   const version = tx.select({ materialId: materialVersion.materialId }).from(materialVersion).where(owned(materialVersion, studioId, materialVersionId)).get()
   return version && !hiddenFrom(tx, studioId, seesPrivate).has(version.materialId) ? null : malformed({ materialVersionId: actRefusals.noMaterial })

@@ -1,6 +1,7 @@
 import { asc, eq, inArray, isNull } from 'drizzle-orm'
 import { batch, coat, coatTarget, face, finishingSchedule, intake, material, materialVersion, order, piece, pieceStep, scheduleVersion, turn } from '~~/db/schema'
 import { cautionsOf } from '~~/server/services/cautions'
+import { intakeCautions } from '~~/server/services/intake-cautions'
 import { pieceHistory } from '~~/server/services/piece-history'
 import { pieceSteps } from '~~/server/services/piece-steps'
 import { ratesOf } from '~~/server/services/rates'
@@ -17,8 +18,6 @@ import { foldPieces } from '~~/server/work/refold'
 import type { FoldedPiece } from '~~/server/work/refold'
 import type { LayerLine, PieceDetail } from '#shared/schemas/piece-detail'
 import type { CautionWire } from '#shared/schemas/schedule'
-import type { CautionKey } from '#shared/library/cautions'
-import type { IntakeQuestion } from '#shared/terms'
 import { isSolventBorne } from '#shared/vapour/facts'
 import { adviceBesideSolvent } from '#shared/words/advice'
 
@@ -78,9 +77,6 @@ function readReasons(db: Database, studioId: number, { parts }: FoldedPiece, pie
   const advice = adviceLines(db, studioId, predicted.map(({ coat: row, prediction }) => ({ id: row.id, versionId: row.materialVersionId, advice: beside ? prediction.advice.map(adviceBesideSolvent) : prediction.advice })))
   return predicted.map(({ coat: { id } }) => ({ coatId: id, rate: rates.find(each => each.coatId === id) ?? null, advice: advice.get(id) ?? [] }))
 }
-
-/** What each question about an old object warns of while it is not answered with "tested, none". */
-const intakeCautions: Record<IntakeQuestion, CautionKey> = { 'lead': 'old paint', 'green cloth': 'green cloth', 'mould': 'mould', 'metal coating': 'metal coating' }
 
 /** Of the materials still to come and of those on it that have not settled. */
 function readCautions(db: Database, studioId: number, pieceId: number, intakes: PieceDetail['intakes']): CautionWire[] {

@@ -1,6 +1,7 @@
 import { eq, isNull } from 'drizzle-orm'
 import { part, piece, place, planHold, reading, room, stay } from '~~/db/schema'
 import { change, isDuplicate, isStillUsed } from '~~/server/utils/change'
+import { newTagCode } from '~~/server/services/tag-codes'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, conflict } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
@@ -56,7 +57,7 @@ const hasRoom = (tx: Transaction, studioId: number, roomId: number) => tx.select
 export function addPlace(db: Database, studioId: number, input: NewPlace): { ok: true, id: number } | Refusal {
   return orRefuse(() => change(db, studioId, 'places', (tx): { ok: true, id: number } | Refusal => {
     if (!hasRoom(tx, studioId, input.roomId)) return absent(settings.roomAbsent)
-    return { ok: true, id: tx.insert(place).values({ ...input, studioId }).returning({ id: place.id }).get().id }
+    return { ok: true, id: tx.insert(place).values({ ...input, studioId, code: newTagCode(tx, studioId) }).returning({ id: place.id }).get().id }
   }), settings.placeTaken(input.name), settings.placeHasHistory)
 }
 

@@ -5,7 +5,7 @@ import { cautionsOf } from '~~/server/services/cautions'
 import type { Database } from '~~/server/utils/database'
 import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
-import { scoped } from '~~/server/utils/scoped'
+import { owned, scoped } from '~~/server/utils/scoped'
 import { airOf } from '~~/server/work/air'
 import { draftOf } from '~~/server/work/draft-of'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
@@ -25,6 +25,15 @@ export function listSchedules(db: Database, owner: StudioRow, now: number): Sche
 /** One of them with its steps, what each waits for and how long. */
 export function findSchedule(db: Database, owner: StudioRow, id: number, now: number): ScheduleDetailWire | Refusal {
   return readSchedules(db, owner, now, id)[0] ?? absent()
+}
+
+/** The edition that a batch was started with, whichever is the newest by now; null when it is not there. */
+export function findEdition(db: Database, owner: StudioRow, versionId: number, now: number): ScheduleDetailWire | null {
+  const row = db.select({ schedule: finishingSchedule, version: scheduleVersion }).from(scheduleVersion).innerJoin(finishingSchedule, eq(finishingSchedule.id, scheduleVersion.scheduleId)).where(owned(scheduleVersion, owner.id, versionId)).get()
+  if (!row) return null
+  const edition = readEdition(db, owner.id, versionId)
+  const materials = readMaterials(db, owner.id, edition.steps.flatMap(step => step.materialId ?? []))
+  return wireOf({ id: row.schedule.id, libraryKey: row.schedule.libraryKey, name: row.schedule.name, summary: row.version.summary, no: row.version.no }, edition, materials, new UsualTimes(db, owner, materials, now))
 }
 
 function readSchedules(db: Database, owner: StudioRow, now: number, only?: number): ScheduleDetailWire[] {

@@ -39,5 +39,6 @@ export type NewPlace = z.output<typeof placeBody>
 export const placePatch = z.partial(placeBody)
 export type PlacePatch = z.output<typeof placePatch>
 
-export interface PlaceWire extends NewPlace { id: number }
+/** `code` is what its tag says; null while it has none. */
+export interface PlaceWire extends NewPlace { id: number, code: string | null }
 export interface RoomWire extends NewRoom { id: number, places: PlaceWire[] }

@@ -34,6 +34,7 @@ export const fields = {
   placeName: 'Give the place a name, at most 80 characters.',
   placeKind: 'Choose what kind of place it is, such as shelf or clamps.',
   capacity: 'The capacity is a whole number of size units, from 1 to 9999.',
+  carrierName: 'Give the carrier a name, at most 80 characters.',
   callKind: 'There is no call of that kind.',
   wanted: 'Say whether the call is wanted: yes or no.',
   pushEndpoint: 'The push address is the https address your browser was given.',

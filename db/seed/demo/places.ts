@@ -1,4 +1,5 @@
-import { place, room } from '~~/db/schema'
+import { carrier, place, room } from '~~/db/schema'
+import { newTagCode } from '~~/server/services/tag-codes'
 import type { Database } from '~~/server/utils/database'
 import type { PlaceKind } from '#shared/terms'
 
@@ -39,7 +40,8 @@ export function addPlaces(db: Database, studioId: number): Places {
   const roomIds = Object.fromEntries(roomKeys.map((key, sort) => [key, db.insert(room).values({ studioId, sort, ...rooms[key] }).returning({ id: room.id }).get().id])) as Record<RoomKey, number>
   const placeIds = Object.fromEntries(placeKeys.map((key, sort) => {
     const [roomKey, name, kind, capacity] = placeRows[key]
-    return [key, db.insert(place).values({ studioId, roomId: roomIds[roomKey], name, kind, capacity, sort }).returning({ id: place.id }).get().id]
+    return [key, db.insert(place).values({ studioId, roomId: roomIds[roomKey], name, kind, capacity, sort, code: newTagCode(db, studioId) }).returning({ id: place.id }).get().id]
   })) as Record<PlaceKey, number>
+  for (const name of ['Long board', 'Tray 1', 'Tray 2']) db.insert(carrier).values({ studioId, name, code: newTagCode(db, studioId) }).run()
   return { rooms: roomIds, places: placeIds }
 }

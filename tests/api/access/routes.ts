@@ -5,7 +5,7 @@ import type { Role } from '#shared/terms'
 export interface RouteCase {
   /** The lowest role that may, or a door that asks for none. */
   least: Role | 'anyone' | 'signed in' | 'wall'
-  /** Fills [id] or [token] of the path from the first studio. */
+  /** Fills [id], [code] or [token] of the path from the first studio. */
   at?: keyof Rows
   body?: (rows: Rows) => unknown
   /**
@@ -119,6 +119,13 @@ export const routes: Record<string, RouteCase> = {
   'places/index.post.ts': { least: 'maker', apart: 'named', body: place },
   'places/[id].patch.ts': { least: 'maker', apart: 'row', at: 'place', body: () => ({ capacity: 8 }) },
   'places/[id].delete.ts': { least: 'maker', apart: 'row', at: 'place' },
+  'carriers/index.get.ts': { least: 'helper', apart: 'view' },
+  'carriers/index.post.ts': { least: 'maker', apart: 'view', body: () => ({ name: 'Long board' }) },
+  'carriers/[id].patch.ts': { least: 'maker', apart: 'row', at: 'carrier', body: () => ({ name: 'Tray 9' }) },
+  'carriers/[id].delete.ts': { least: 'maker', apart: 'row', at: 'carrier' },
+  'tags/index.get.ts': { least: 'helper', apart: 'view' },
+  'tags/codes.post.ts': { least: 'maker', apart: 'view' },
+  'tags/[code].get.ts': { least: 'helper', apart: 'row', at: 'tagCode' },
   'calendar/index.get.ts': { least: 'helper', apart: 'view' },
   'calendar/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ everybody: false }) },
   // Everybody ends their own address and nobody another's.
@@ -151,6 +158,7 @@ export const routes: Record<string, RouteCase> = {
   'batches/start-check.post.ts': { least: 'maker', apart: 'named', body: rows => ({ scheduleId: rows.schedule, pieces: 1, placeId: rows.place, startsAt: recently() }) },
   'promises/estimate.post.ts': { least: 'maker', apart: 'named', body: rows => ({ scheduleId: rows.schedule, pieces: 1, placeId: rows.place, startsAt: recently() }) },
   'promises/basis.put.ts': { least: 'maker', apart: 'view', body: () => ({ reworkOfTen: 2 }) },
+  'batches/[id]/card.get.ts': { least: 'helper', apart: 'row', at: 'batch' },
   'batches/[id]/promise.get.ts': { least: 'maker', apart: 'row', at: 'batch' },
   // Nothing of it is left to do: who may is told that no date can be given.
   'batches/[id]/promise.post.ts': { least: 'maker', apart: 'row', at: 'batch', asLeast: 422, body: () => ({ dateAt: new Date(Date.now() + 5 * 86_400_000).toISOString(), orderName: 'Fair' }) },

@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, invitationToken: string, calendarToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -60,6 +60,8 @@ function writePin(file: string, batchId: number) {
 export async function fillStudio(owner: Visitor, databaseFile: string): Promise<Rows> {
   const room = await made(owner, '/api/rooms', roomOf(`${marker} room`))
   const place = await made(owner, '/api/places', { roomId: room.id, name: `${marker} shelf`, kind: 'shelf', capacity: 6, sort: 0 })
+  const carrier = await made(owner, '/api/carriers', { name: `${marker} tray` })
+  const carriers = await owner.get<{ code: string }[]>('/api/carriers')
   const closure = await made(owner, '/api/closures', { memberId: null, name: `${marker} holiday`, fromDate: '2030-05-01', toDate: '2030-05-03' })
   const invitation = await made(owner, '/api/invitations', { role: 'helper', email: `${marker.toLowerCase()}@example.test` })
   const wall = await made(owner, '/api/wall-links', { name: `${marker} tablet` })
@@ -89,7 +91,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const planned = await owner.post<{ batchId: number }>('/api/batches', { clientKey: 'access-planned-batch', name: `${marker} bowls`, scheduleId: schedule.id, pieces: [`${marker} bowl`], placeId: place.id, order: null, startsAt: now() })
   const pinned = writePin(databaseFile, planned.body.batchId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, carrier: carrier.id, tagCode: carriers.body[0]?.code ?? '', rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */

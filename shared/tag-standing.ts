@@ -1,0 +1,22 @@
+import { standings } from '#shared/board'
+import type { Standing } from '#shared/board'
+import type { TagFound } from '#shared/schemas/tag'
+import type { ReadPiece } from '#shared/verdict/piece'
+
+type Tag = Pick<Exclude<TagFound, { kind: 'elsewhere' }>, 'kind' | 'id' | 'name'>
+
+/** What stands on a shelf or a carrier: parts of a piece that stand elsewhere are left out. */
+export function standingsAt(tag: Tag, pieces: readonly ReadPiece[]): Standing[] {
+  const all = standings(pieces)
+  return tag.kind === 'place' ? all.get(tag.id) ?? [] : [...all.values()].flat().filter(each => each.groups.some(({ group }) => group.carrier === tag.name))
+}
+
+/** The pieces of which anything stands on a shelf or a carrier, in their order. */
+export function standsAt(tag: Tag, pieces: readonly ReadPiece[]): ReadPiece[] {
+  return pieces.filter(read => read.piece.groups.some(group => tag.kind === 'place' ? group.placeId === tag.id : group.carrier === tag.name))
+}
+
+/** The parts of those pieces that stand there, to be moved without what stands elsewhere. */
+export function partsAt(tag: Tag, reads: readonly ReadPiece[]): number[] {
+  return reads.flatMap(read => read.piece.groups.filter(group => tag.kind === 'place' ? group.placeId === tag.id : group.carrier === tag.name).flatMap(group => group.parts.map(part => part.partId)))
+}
