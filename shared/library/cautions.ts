@@ -1,3 +1,5 @@
+import { cautionParts as parts } from '#shared/library/caution-parts'
+
 export type CautionBasis = 'published' | 'published, check the data sheet' | 'common practice'
 
 interface CautionText { text: string, basis: CautionBasis, scope: string }
@@ -7,7 +9,7 @@ export const cautionDeferral = 'Follow the product\'s safety data sheet and your
 
 const health = {
   'vapour': {
-    text: 'Its vapour can harm you. Open windows on two sides or run an exhaust that blows outdoors. Keep it going while the coat is wet and after you stop. Your nose is no guide: it tires, and some vapour has no smell.',
+    text: `Its vapour can harm you. Open windows on two sides or run an exhaust that blows outdoors. Keep it going while the coat is wet and after you stop. ${parts.noseTires}`,
     basis: 'published', scope: 'every material with a solvent',
   },
   'airing': {
@@ -94,15 +96,15 @@ const health = {
 
 const fire = {
   'flames': {
-    text: 'Before you open it, put out flames and pilot lights. Switch off heaters, stoves and motors. Open windows and doors on two sides, and do not smoke. Leave all that off till the vapour has gone. It sinks, creeps along the floor and can flash back.',
+    text: `${parts.flamesOut} Open windows and doors on two sides, and do not smoke. Leave all that off till the vapour has gone. It sinks, creeps along the floor and can flash back.`,
     basis: 'published', scope: 'materials that catch fire easily',
   },
   'fan': {
-    text: 'A house fan in the vapour can spark. Blow clean air across the work from outside the vapour, or use a fan made for it. No heater and no warm air while the film is wet.',
+    text: `${parts.fanSparks} Blow clean air across the work from outside the vapour, or use a fan made for it. ${parts.noWarmAir}`,
     basis: 'published', scope: 'materials that catch fire easily',
   },
   'phones': {
-    text: 'Phones, tablets and chargers stay out of the spray room. They can spark, and they are not made for vapour. Write it down when you come out.',
+    text: `${parts.phonesOut} ${parts.phonesSpark} Write it down when you come out.`,
     basis: 'common practice', scope: 'spray rooms and booths',
   },
   'pouring': {
@@ -114,7 +116,7 @@ const fire = {
     basis: 'published', scope: 'spray cans',
   },
   'oily rags': {
-    text: 'Oily rags heat up on their own and can catch fire hours later. Never ball, bag or bin them. Lay them flat in one layer outdoors, away from walls, till they are stiff. Or put them under water in a metal can with a lid, for the waste depot. The same goes for pads, towels, steel wool, drop sheets, spray filters and the sander bag.',
+    text: `${parts.ragsHeat} Never ball, bag or bin them. ${parts.ragsWhere} ${parts.ragsAll}`,
     basis: 'published', scope: 'every material with a drying oil',
   },
   'waste can': {

@@ -1,3 +1,4 @@
+import { cautionParts } from '#shared/library/caution-parts'
 import type { CallKind, Channel, RagAnswer } from '#shared/terms'
 
 /** What Settings says about calls: where they go, which are on, and what became of them. */
@@ -18,7 +19,7 @@ export const callSettings = {
     'before you leave': { label: 'Before you leave', hint: 'Half an hour before the studio shuts: what shuts overnight, what is outdoors, heating, lids, glue pot, rags.' },
     'check the room': { label: 'Time to check the spray room', hint: 'When a shut room is not expected to hold much vapour any more. It stays shut until somebody has looked.' },
     'promise slipping': { label: 'A promise slips', hint: 'Once, when a promised date is likely to pass, with its cause and whom to tell.' },
-    'rags': { label: 'Oily rags', hint: 'This call cannot be switched off. Oily rags can catch fire by themselves hours later, so it goes to everybody until somebody answers.' },
+    'rags': { label: 'Oily rags', hint: `This call cannot be switched off. ${cautionParts.ragsHeat} So it goes to everybody until somebody answers.` },
     'vapour': { label: 'Solvent work begins', hint: 'This call cannot be switched off. It tells everybody which room to stay out of, and where flames and heaters must be off.' },
   } satisfies Record<CallKind, { label: string, hint: string }>,
   quiet: {

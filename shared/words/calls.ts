@@ -1,3 +1,5 @@
+import { cautionParts } from '#shared/library/caution-parts'
+import { cautionDeferral } from '#shared/library/cautions'
 import { asSentence } from '#shared/words/verdict'
 
 /** Every sentence of the calls: what a notification and a mail say. Times arrive as words. */
@@ -11,6 +13,9 @@ export function someOf(names: readonly string[]): string {
 }
 
 interface Work { batch: string, count: number }
+
+/** Said of a room where vapour is. */
+const noIgnition = `No ${cautionParts.ignition} in there.`
 
 const what = ({ batch, count }: Work) => `${batch}, ${pieces(count)}.`
 
@@ -31,26 +36,26 @@ export const callWords = {
     shuts: (batch: string, says: string) => `Shuts overnight: ${batch}. ${asSentence(says)}`,
     outdoors: (names: readonly string[]) => `Still outdoors: ${someOf(names)}. Look on the board how to hold them before you bring them in.`,
     heater: (room: string, films: number) => `${room}: ${films === 1 ? 'a film is' : `${films} films are`} still drying. The times count on the heating tonight.`,
-    solvent: (room: string) => `${room}: a solvent film is drying. No flame, pilot light or heater in there.`,
+    solvent: (room: string) => `${room}: a solvent film is drying. ${noIgnition}`,
     lids: (names: readonly string[]) => `Lids on: ${someOf(names)}.`,
     pot: 'Is the glue pot off?',
     rags: (rooms: readonly string[]) => `Oily rags from ${someOf(rooms)}: say where they are.`,
   },
   rags: {
     title: 'Where are the oily rags?',
-    body: (room: string, last: string) => `${room}, last oil at ${last}. Rags, pads, towels, steel wool and the bag of the sander can catch fire by themselves hours later. Flat outdoors in one layer, or in the water can? We ask again until somebody answers. Follow the product's safety data sheet and your local rules.`,
+    body: (room: string, last: string) => `${room}, last oil at ${last}. ${cautionParts.ragsHeat} ${cautionParts.ragsWhere} ${cautionParts.ragsAll} We ask again until somebody answers. ${cautionDeferral}`,
     sayWhere: 'Say where the rags are: flat outdoors, in the water can, or not dealt with.',
     answeredAlready: 'Somebody has answered for these rags already.',
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
   },
   vapour: {
     title: (room: string) => `Keep out of ${room}: solvent work begins`,
-    body: (room: string, name: string | null, exhaust: boolean) => `${name ?? 'The bench'} begins solvent work in ${room}. ${exhaust ? 'The exhaust is running.' : 'There is no exhaust: the vapour may spread.'} Flames, pilot lights, heaters and motors stay off there. Phones, tablets and chargers stay out. Follow the product's safety data sheet and your local rules.`,
+    body: (room: string, name: string | null, exhaust: boolean) => `${name ?? 'The bench'} begins solvent work in ${room}. ${exhaust ? 'The exhaust is running.' : cautionParts.spreads} ${noIgnition} ${cautionParts.phonesOut} ${cautionDeferral}`,
     stays: 'This call stays till the room has been opened. Say that you have seen it instead.',
   },
   checkRoom: {
     title: (room: string) => `Time to check ${room}`,
-    body: (room: string, name: string) => `${room} is still shut. Exhaust on? Smell or stinging: stay out. A nose is no guide to all of it. ${name === '' ? 'An owner' : name} looks in and opens it, or leaves it shut.`,
+    body: (room: string, name: string) => `${room} is still shut. ${cautionParts.lookIn} ${cautionParts.noseTires} ${name === '' ? 'An owner' : name} looks in and opens it, or leaves it shut.`,
   },
   notification: {
     coatOn: 'Coat is on',

@@ -1,3 +1,4 @@
+import { cautionParts } from '#shared/library/caution-parts'
 import type { Job, Section } from '#shared/hands'
 import type { StillToday } from '#shared/hands-today'
 import type { Clock } from '#shared/time'
@@ -178,6 +179,6 @@ export const toldWords = {
 /** Oily rags, asked until somebody says. */
 export const ragWords = {
   ask: (room: string) => `Where are the oily rags from ${room}?`,
-  since: (time: string) => `Oil was last on the rags at ${time}. Heaped rags can set themselves alight. Pads, towels, steel wool and the bag of the sander count too.`,
+  since: (time: string) => `Oil was last on the rags at ${time}. ${cautionParts.ragsHeat} ${cautionParts.ragsAll}`,
   answers: { 'flat outdoors': 'Spread flat outdoors', 'in water can': 'In the water can', 'not dealt with': 'Not dealt with yet' },
 } as const

@@ -1,3 +1,4 @@
+import { cautionParts } from '#shared/library/caution-parts'
 import type { PlaceKind, Role, StepKind } from '#shared/terms'
 
 /** What the pages of the settings say. */
@@ -151,7 +152,7 @@ export const wallForm = {
   elsewhere: 'somewhere else',
   name: 'Name of the link',
   make: 'Make a wall link',
-  spray: (room: string) => `${room} is a spray area. Phones, tablets and chargers are not rated for vapour that catches fire: hang it outside, where it can be read before going in.`,
+  spray: (room: string) => `${room} is a spray area. ${cautionParts.phonesOut} ${cautionParts.phonesSpark} Hang it outside, where it can be read before going in.`,
   links: 'Links',
   none: 'No wall link has been made yet.',
   made: (time: string) => `made ${time}`,

@@ -38,6 +38,7 @@ export const carrierWords = {
 export const tagWords = {
   failed: 'What stands here could not be fetched.',
   waiting: 'Fetching what stands here',
+  heading: 'Shelf or carrier',
   notOurs: 'Not a tag of this studio',
   typed: (code: string) => `The tag says ${code}.`,
   elsewhere: (studio: string) => `This tag belongs to ${studio}`,

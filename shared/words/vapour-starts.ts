@@ -1,3 +1,6 @@
+import { cautionParts } from '#shared/library/caution-parts'
+import { asSentence } from '#shared/words/verdict'
+
 /** What is asked, said and refused when solvent work begins in a room. */
 export const startVapour = {
   title: (room: string) => `Solvent work in ${room}`,
@@ -5,26 +8,26 @@ export const startVapour = {
   exhaust: 'Is the exhaust running?',
   exhaustAnswers: { running: 'It is running', none: 'There is none' },
   exhaustNone: 'Without an exhaust nobody can say how much vapour hangs there. You are asked every time.',
-  flames: 'Are flames, pilot lights, heaters and motors off?',
+  flames: `Are ${cautionParts.ignition} off?`,
   nobodyElse: 'Is nobody else in there?',
   yes: 'Yes',
   no: 'No',
-  phones: 'Phones, tablets and chargers stay out of the spray area. Record it when you come out: the time keys go back.',
+  phones: `${cautionParts.phonesOut} Record it when you come out: the time keys go back.`,
   putAway: 'Leave this device outside when you go in.',
   begin: 'Begin',
   record: 'Record it',
   leave: 'Not now',
   cautions: 'What to mind',
   told: 'Everybody is told.',
-  ask: (rooms: string) => `Before solvent work in ${rooms}: is the exhaust running, are flames, pilot lights, heaters and motors off, is nobody else in there? Answer all three.`,
+  ask: (rooms: string) => `Before solvent work in ${rooms}: is the exhaust running, are ${cautionParts.ignition} off, is nobody else in there? Answer all three.`,
   unanswered: 'Answer all three first.',
-  flamesOn: 'Put out flames and pilot lights, and switch off heaters and motors first. Then say it again.',
+  flamesOn: `${cautionParts.flamesOut} Then say it again.`,
   somebodyThere: 'Wait till the others have left the room. Then say it again.',
   tellAnew: 'That makes it solvent work, or puts it in another room, and three things are asked first. Take this act back and tell the work anew.',
   sleptIn: (room: string) => `Somebody sleeps in ${room}, or it shares its air with a bedroom. No solvent work and no wet solvent film in there. Choose another room.`,
   keepOut: (room: string, name: string) => name === '' ? `${room} is shut: keep out till an owner has opened it.` : `${room} is shut: keep out till ${name} or an owner has opened it.`,
   isocyanate: (material: string) => `${material} holds isocyanate. An owner must first state in writing how it is used here and what is worn. The page for air and fire takes it.`,
-  noFan: 'No fan on a solvent film in this room: its motor can spark, and it blows the vapour about. Let the exhaust do it.',
-  warmRoom: 'No warm air in a room with a wet solvent film: it feeds the vapour. Let the exhaust do it.',
-  oldObject: (piece: string, why: string) => `${piece} is an old object: ${why}. No sanding, scraping, heating, piercing or cutting till an expert has tested it.`,
+  noFan: `No fan on a solvent film in this room. ${cautionParts.fanSparks} Let the exhaust do it.`,
+  warmRoom: `There is a wet solvent film in this room. ${cautionParts.noWarmAir} Let the exhaust do it.`,
+  oldObject: (piece: string, why: string) => `${piece} is an old object: ${why}. ${asSentence(cautionParts.untested)} Let an expert test it first.`,
 } as const

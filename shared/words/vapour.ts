@@ -1,3 +1,4 @@
+import { cautionParts } from '#shared/library/caution-parts'
 import type { InputSource, UsedInput } from '#shared/vapour/facts'
 import type { Contribution, Levers, RoomSums } from '#shared/vapour/picture'
 import type { FireStage, VapourBand, VapourInput } from '#shared/vapour/types'
@@ -33,7 +34,7 @@ export const vapourWords = {
   nothingAhead: 'Nothing that gives off vapour is planned in here within a day.',
   outdoors: 'Outdoors: there is no room to fill, so nothing is reckoned. Stand upwind, and keep flames away.',
   sleptIn: 'Slept in: solvent work and wet solvent films are refused in here.',
-  sprayArea: 'Spray area: phones, tablets and chargers stay out.',
+  sprayArea: cautionParts.phonesOut,
   inTheAir: 'In the air now',
   worstQuarter: 'Worst quarter of an hour',
   worstDay: 'Worst eight hours',
@@ -60,10 +61,10 @@ export const vapourWords = {
   seen: 'I have seen it',
   seenBy: (names: readonly string[]) => names.length > 0 ? `Seen by ${listText(names)}.` : 'Nobody has said that they saw it.',
   unseenBy: (names: readonly string[]) => `Not yet: ${listText(names)}.`,
-  started: (name: string | null, room: string, time: string, running: boolean) => `${name ?? 'The bench'} began solvent work in ${room}, ${time}. ${running ? 'The exhaust was said to run.' : 'There is no exhaust.'} Flames, pilot lights, heaters and motors were said to be off, and nobody else inside.`,
+  started: (name: string | null, room: string, time: string, running: boolean) => `${name ?? 'The bench'} began solvent work in ${room}, ${time}. ${running ? 'The exhaust was said to run.' : 'There is no exhaust.'} No ${cautionParts.ignition} were said to be on, and nobody else inside.`,
   rags: 'Oily rags',
   noRags: 'Nobody has to answer for rags now. Every drying oil asks again.',
-  ragsCount: 'Rags, pads, paper towels, steel wool, drop sheets and the bag of the sander all count.',
+  ragsCount: `${cautionParts.ragsHeat} ${cautionParts.ragsAll}`,
   sizes: 'Pieces nobody has measured',
   sizesSays: 'Without the surface of a piece half a square metre stands in for each, and the room counts as not known.',
   size: (batch: string) => `Surface of one piece of ${batch}`,
@@ -135,7 +136,7 @@ export const bandText: Record<VapourBand, string> = {
 
 export const fireText: Record<FireStage, string | null> = {
   'none': null,
-  'sources-off': 'Ignition sources off: flames, pilot lights, heaters, motors, phones.',
+  'sources-off': `Ignition sources off: ${cautionParts.ignition}, and phones.`,
   'stop': 'Stop: so much vapour can burn. Leave, air from outside, call for help if in doubt.',
   'unknown': 'Nobody can say how near it comes to burning: ignition sources off.',
 }

@@ -1,3 +1,4 @@
+import { cautionParts } from '#shared/library/caution-parts'
 import { clockTime, localDate, localMinutes, addDays, roughTime } from '#shared/time'
 import { lowerFirst } from '#shared/words/steps'
 import type { Clock } from '#shared/time'
@@ -83,7 +84,7 @@ export function verdictReason(reason: VerdictReason, clock: Clock): string {
     case 'no promise': return predictionReason(reason.reason)
     case 'coat due': return `${lowerFirst(reason.what) || 'a coat'} was due ${clockTime(reason.at, clock)}`
     case 'not there': return notThereText(reason.where, reason.seenAt, clock)
-    case 'intake': return `${intakeHazards[reason.question]}: no sanding, scraping, heating, piercing or cutting`
+    case 'intake': return `${intakeHazards[reason.question]}: ${cautionParts.untested}`
     case 'grip wet': return `wet away from ${gripText(reason.grip)}`
     case 'dry': return 'dry to handle'
     case 'cut off': return `not heard from the studio since ${clockTime(reason.since, clock)}`

@@ -134,7 +134,7 @@ describe('before you leave', () => {
     startBatch(test, 1)
     test.db.update(coat).set({ materialVersionId: null }).run()
     const body = wanted(test, noon, 'before you leave')[0]?.body
-    expect(body).toContain('No flame, pilot light or heater in there.')
+    expect(body).toContain('No flames, pilot lights, heaters and motors in there.')
     expect(body).not.toContain('count on the heating')
   })
 
