@@ -31,9 +31,9 @@ export function findSchedule(db: Database, owner: StudioRow, id: number, now: nu
 export function findEdition(db: Database, owner: StudioRow, versionId: number, now: number): ScheduleDetailWire | null {
   const row = db.select({ schedule: finishingSchedule, version: scheduleVersion }).from(scheduleVersion).innerJoin(finishingSchedule, eq(finishingSchedule.id, scheduleVersion.scheduleId)).where(owned(scheduleVersion, owner.id, versionId)).get()
   if (!row) return null
-  const edition = readEdition(db, owner.id, versionId)
-  const materials = readMaterials(db, owner.id, edition.steps.flatMap(step => step.materialId ?? []))
-  return wireOf({ id: row.schedule.id, libraryKey: row.schedule.libraryKey, name: row.schedule.name, summary: row.version.summary, no: row.version.no }, edition, materials, new UsualTimes(db, owner, materials, now))
+  const draft = draftOf(row.schedule.name, row.version.summary, readEdition(db, owner.id, versionId))
+  const materials = readMaterials(db, owner.id, draft.steps.flatMap(step => step.materialId ?? []))
+  return wireOf({ id: row.schedule.id, libraryKey: row.schedule.libraryKey, name: row.schedule.name, summary: row.version.summary, no: row.version.no }, draft, materials, usualFilms(db, owner, materials, now))
 }
 
 function readSchedules(db: Database, owner: StudioRow, now: number, only?: number): ScheduleDetailWire[] {
