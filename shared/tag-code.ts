@@ -41,12 +41,3 @@ export const isTagCode = (text: string) => 'code' in readTagCode(text) && text.l
 
 /** Where a tag leads: a path of this installation, so that a phone's camera opens it. */
 export const tagPath = (code: string) => `/tag/${code}`
-
-/** The code in what a QR says, read by whatever: of a tag of this installation, or null with what it is instead. */
-export function codeFrom(text: string, origins: readonly string[]): { code: string } | { why: 'not ours' | 'other installation' } {
-  const found = /^(https?:\/\/[^/]+)\/tag\/([^/?#]+)$/i.exec(text.trim())
-  if (!found) return { why: 'not ours' }
-  const read = readTagCode(found[2] ?? '')
-  if (!('code' in read)) return { why: 'not ours' }
-  return origins.some(origin => origin.toLowerCase() === (found[1] ?? '').toLowerCase()) ? read : { why: 'other installation' }
-}

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { codeFrom, isTagCode, makeTagCode, readTagCode, tagLength, tagLetters, tagPath } from '#shared/tag-code'
+import { isTagCode, makeTagCode, readTagCode, tagLength, tagLetters } from '#shared/tag-code'
 import { tagMistake } from '#shared/words/tags'
 
 const code = fc.array(fc.double({ min: 0, max: 1, maxExcluded: true, noNaN: true }), { minLength: 4, maxLength: 4 }).map((draws) => {
@@ -46,13 +46,5 @@ describe('a tag\'s code', () => {
     expect(tagMistake({ why: 'letter', letter: 'O' })).toMatch(/^A code has no O\. /)
     expect(tagMistake({ why: 'length', count: 3 })).toBe('A code has 5 letters or figures; this has 3.')
     expect(tagMistake({ why: 'check' })).toMatch(/do not fit together/)
-  })
-
-  it('is taken out of what a camera read, only where the address is ours', () => {
-    const ours = ['http://192.168.1.5:3000']
-    expect(codeFrom(`http://192.168.1.5:3000${tagPath('YYYY6')}`, ours)).toEqual({ code: 'YYYY6' })
-    expect(codeFrom('https://elsewhere.test/tag/YYYY6', ours)).toEqual({ why: 'other installation' })
-    expect(codeFrom('http://192.168.1.5:3000/tag/YYYY7', ours)).toEqual({ why: 'not ours' })
-    expect(codeFrom('a bill', ours)).toEqual({ why: 'not ours' })
   })
 })
