@@ -1,5 +1,5 @@
 import { askerOf } from '~~/server/planning/questions'
-import { reckonPromises } from '~~/server/planning/promise-watch'
+import { reckonPromises, savesPromise } from '~~/server/planning/promise-watch'
 import type { Search } from '~~/server/planning/search'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
 import type { KeptBases } from '~~/server/services/plan-questions'
@@ -24,6 +24,7 @@ export const answers = {
   'date of new': ({ db, now, search }: Asked, { studioId, request }: OfStudio & { request: BatchToComeRequest }) => promiseForNew(db, studioId, request, now, search),
   'date': ({ db, now, search }: Asked, { studioId, batchId }: OfStudio & { batchId: number }) => promiseState(db, studioId, batchId, now, search),
   'promises': ({ db, now, search }: Asked, { studioId }: OfStudio) => reckonPromises(db, studioId, now, search),
+  'rescue': ({ db, now, search }: Asked, { studioId, orderId, batchId }: OfStudio & { orderId: number, batchId: number }) => savesPromise(db, studioId, orderId, batchId, now, search),
   'pin': ({ db, now, search }: Asked, { studioId, body }: OfStudio & { body: PinBody }) => checkPin(db, studioId, body, now, search),
 }
 

@@ -7,33 +7,48 @@ import type { Search } from '~~/server/planning/search'
 import { luckOf, readBasis } from '~~/server/services/promise-basis'
 import { asPlanned } from '~~/server/services/promises'
 import type { Database } from '~~/server/utils/database'
-import { scoped } from '~~/server/utils/scoped'
+import { isRefusal } from '~~/server/utils/errors'
+import type { Refusal } from '~~/server/utils/errors'
+import { owned, scoped } from '~~/server/utils/scoped'
 import type { Estimate } from '#shared/promise/simulate'
-import type { Luck } from '#shared/promise/types'
 import { promiseCauses } from '#shared/terms'
 import type { PromiseCause } from '#shared/terms'
 
 const minute = 60_000
 /** A promise is looked at again at most so often, ms. */
 const lookAgainMs = 15 * minute
-/** Batches that are tried moved back, how long each is searched for, and in how many scenarios. */
-const rescueTries = 4
+/** How long each batch that is tried moved back is searched for, ms, and in how many scenarios. */
 const rescueMs = 150
 const rescueScenarios = 60
 
 interface Watched { orderId: number, promiseId: number, promisedAt: number, dateAt: number, batchIds: number[] }
 
-/** How one promise stands. `rescue`: the batch that would save it moved back, null where none would, undefined where it was not looked for. */
-export interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, rescue: number | null | undefined }
+/** How one promise stands. `others`: batches that might save it, moved back, where it begins to slip; null where nothing is to be looked for. */
+export interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, others: readonly number[] | null }
 
-/** Whether some promise is to be looked at: its plan has changed since it was last. `now` in ms UTC. */
-export const isAnyToLookAt = (db: Database, studioId: number, now: number) => toLookAt(db, studioId, now).length > 0
+/** What the watch asks of the worker, one question at a time, so that people's own come between. */
+export interface WatchQuestions { reckon: () => Promise<Reckoned[] | Refusal>, saves: (orderId: number, batchId: number) => Promise<boolean | Refusal> }
 
 /**
- * Looks at every promised date whose plan has changed since it was last looked at. Where one begins to slip, looks for a batch that would
- * save it, moved back. Writes nothing.
+ * Looks at every promised date whose plan has changed since it was last looked at, and notes whether it holds. Where one begins to slip, looks
+ * through all batches of other orders for one that would save it, moved back.
  * @param now ms UTC
+ * @returns how many were looked at
  */
+export async function watchPromises(db: Database, studioId: number, now: number, ask: WatchQuestions): Promise<number> {
+  if (toLookAt(db, studioId, now).length === 0) return 0
+  const reckoned = await ask.reckon()
+  if (isRefusal(reckoned)) return 0
+  for (const each of reckoned) note(db, studioId, each, each.others === null ? undefined : await firstThatSaves(each.others, each.watched.orderId, ask), now)
+  return reckoned.length
+}
+
+async function firstThatSaves(others: readonly number[], orderId: number, ask: WatchQuestions): Promise<number | null> {
+  for (const batchId of others) if (await ask.saves(orderId, batchId) === true) return batchId
+  return null
+}
+
+/** How every promise stands that is to be looked at. Writes nothing. `now` in ms UTC. */
 export async function reckonPromises(db: Database, studioId: number, now: number, search: Search): Promise<Reckoned[]> {
   const due = toLookAt(db, studioId, now)
   const facts = due.length === 0 ? null : readPlanFacts(db, studioId)
@@ -41,16 +56,13 @@ export async function reckonPromises(db: Database, studioId: number, now: number
   const luck = luckOf(readBasis(db, studioId, now))
   const made = await estimatePlan(db, facts, now, luck, search, { key: `watch ${studioId}`, batchIds: due.flatMap(each => each.batchIds), ...asPlanned })
   if (!made) return []
-  const looked: Reckoned[] = []
-  for (const watched of due) {
+  return due.flatMap((watched): Reckoned[] => {
     const found = estimateOf(made, facts, watched.batchIds)
-    if (!found) continue
+    if (!found) return []
     const at = (minutes: number) => made.given.zeroAt + minutes * minute
     const slips = at(found.cautious) > watched.promisedAt
-    const rescue = slips && !wasSlipping(db, watched) ? await findRescue(db, facts, watched, now, luck, search) : undefined
-    looked.push({ watched, likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, rescue })
-  }
-  return looked
+    return [{ watched, likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, others: slips && !wasSlipping(db, watched) ? othersThan(facts, watched) : null }]
+  })
 }
 
 function toLookAt(db: Database, studioId: number, now: number): Watched[] {
@@ -58,29 +70,35 @@ function toLookAt(db: Database, studioId: number, now: number): Watched[] {
   if (!current) return []
   const orders = db.select({ order, reckonedAt: promiseWatch.reckonedAt }).from(order).leftJoin(promiseWatch, eq(promiseWatch.orderId, order.id))
     .where(and(scoped(order, studioId, isNotNull(order.promisedAt), isNull(order.closedAt)))).all()
-  return orders.flatMap(({ order: row, reckonedAt }): Watched[] => {
-    if (row.promisedAt === null || (reckonedAt !== null && (now - reckonedAt < lookAgainMs || current.madeAt <= reckonedAt))) return []
-    const last = db.select({ id: promise.id, dateAt: promise.dateAt }).from(promise).where(scoped(promise, studioId, eq(promise.orderId, row.id))).orderBy(desc(promise.id)).get()
-    const batchIds = db.select({ id: batch.id }).from(batch).where(scoped(batch, studioId, eq(batch.orderId, row.id), isNull(batch.closedAt))).all().map(each => each.id)
-    return last && batchIds.length > 0 ? [{ orderId: row.id, promiseId: last.id, promisedAt: row.promisedAt, dateAt: last.dateAt, batchIds }] : []
-  })
+  return orders.flatMap(({ order: row, reckonedAt }) => (reckonedAt !== null && (now - reckonedAt < lookAgainMs || current.madeAt <= reckonedAt) ? [] : watchedOf(db, studioId, row) ?? []))
+}
+
+function watchedOf(db: Database, studioId: number, { id, promisedAt }: typeof order.$inferSelect): Watched | null {
+  const last = db.select({ id: promise.id, dateAt: promise.dateAt }).from(promise).where(scoped(promise, studioId, eq(promise.orderId, id))).orderBy(desc(promise.id)).get()
+  const batchIds = db.select({ id: batch.id }).from(batch).where(scoped(batch, studioId, eq(batch.orderId, id), isNull(batch.closedAt))).all().map(each => each.id)
+  return promisedAt !== null && last && batchIds.length > 0 ? { orderId: id, promiseId: last.id, promisedAt, dateAt: last.dateAt, batchIds } : null
 }
 
 const wasSlipping = (db: Database, { orderId }: Watched) => db.select({ slipping: promiseWatch.slipping }).from(promiseWatch).where(eq(promiseWatch.orderId, orderId)).get()?.slipping ?? false
 
 const mainCause = ({ causes }: Estimate): PromiseCause => promiseCauses.reduce((most, cause) => (causes[cause] > causes[most] ? cause : most))
 
-/** The batch of another order that, out of the way, lets the promise hold: the lightest first, of equals the one with most time. Null when none does. */
-async function findRescue(db: Database, facts: PlanFacts, watched: Watched, now: number, luck: Luck, search: Search): Promise<number | null> {
+/** Batches of other orders: the lightest first, of equals the one with most time. */
+function othersThan(facts: PlanFacts, watched: Watched): number[] {
   const others = new Map(facts.pieces.filter(piece => !watched.batchIds.includes(piece.batchId)).map(piece => [piece.batchId, piece]))
-  const tried = [...others.values()].sort((a, b) => (a.weight ?? 1) - (b.weight ?? 1) || (b.dueAt ?? Infinity) - (a.dueAt ?? Infinity) || a.batchId - b.batchId).slice(0, rescueTries)
-  for (const { batchId } of tried) {
-    const without = withoutBatch(facts, batchId)
-    const made = await estimatePlan(db, without, now, luck, search, { key: `rescue ${facts.owner.id} ${batchId}`, batchIds: watched.batchIds, millis: rescueMs, scenarios: rescueScenarios, causes: [] })
-    const found = made && estimateOf(made, without, watched.batchIds)
-    if (made && found && made.given.zeroAt + found.cautious * minute <= watched.promisedAt) return batchId
-  }
-  return null
+  return [...others.values()].sort((a, b) => (a.weight ?? 1) - (b.weight ?? 1) || (b.dueAt ?? Infinity) - (a.dueAt ?? Infinity) || a.batchId - b.batchId).map(each => each.batchId)
+}
+
+/** Whether the promise of an order would hold were one batch out of the way. Writes nothing. `now` in ms UTC. */
+export async function savesPromise(db: Database, studioId: number, orderId: number, batchId: number, now: number, search: Search): Promise<boolean> {
+  const row = db.select().from(order).where(owned(order, studioId, orderId)).get()
+  const watched = row ? watchedOf(db, studioId, row) : null
+  const facts = readPlanFacts(db, studioId)
+  if (!watched || !facts) return false
+  const without = withoutBatch(facts, batchId)
+  const made = await estimatePlan(db, without, now, luckOf(readBasis(db, studioId, now)), search, { key: `rescue ${batchId}`, batchIds: watched.batchIds, millis: rescueMs, scenarios: rescueScenarios, causes: [] })
+  const found = made && estimateOf(made, without, watched.batchIds)
+  return Boolean(made && found && made.given.zeroAt + found.cautious * minute <= watched.promisedAt)
 }
 
 /** A studio's facts without the work of one batch; its pieces stay where they stand. */
@@ -89,8 +107,8 @@ function withoutBatch(facts: PlanFacts, batchId: number): PlanFacts {
   return { ...facts, steps: facts.steps.filter(step => !pieces.has(step.pieceId)) }
 }
 
-/** Writes how a promise stands. It begins to slip once, until it holds again and slips anew. `now` in ms UTC. */
-export function notePromise(db: Database, studioId: number, { watched: { orderId, promiseId }, likelyAt, dateAt, slips, cause, rescue }: Reckoned, now: number) {
+/** Writes how a promise stands. It begins to slip once, until it holds again and slips anew. `rescue` undefined: what was found before stays. */
+function note(db: Database, studioId: number, { watched: { orderId, promiseId }, likelyAt, dateAt, slips, cause }: Reckoned, rescue: number | null | undefined, now: number) {
   db.transaction((tx) => {
     const known = tx.select().from(promiseWatch).where(eq(promiseWatch.orderId, orderId)).get()
     const begins = slips && !(known?.slipping ?? false)

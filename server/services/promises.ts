@@ -76,6 +76,15 @@ function standingOf(db: Database, studioId: number, { id, promisedAt }: typeof o
   return { promisedAt, madeAt: last?.madeAt ?? null, slipping: watch?.watch.slipping ?? false, cause: watch?.watch.cause ?? null, cautiousAt: watch?.watch.dateAt ?? null, rescue: watch?.rescue ?? null }
 }
 
+/** Promises that slip, as the watch last found them, by order. */
+export function slippingPromises(db: Database, studioId: number): Map<number, PromiseStanding> {
+  const rows = db.select({ order }).from(promiseWatch).innerJoin(order, eq(order.id, promiseWatch.orderId)).where(and(scoped(promiseWatch, studioId, eq(promiseWatch.slipping, true)), isNull(order.closedAt))).all()
+  return new Map(rows.flatMap(({ order: row }) => {
+    const standing = standingOf(db, studioId, row)
+    return standing ? [[row.id, standing] as const] : []
+  }))
+}
+
 /** What a batch that has not been started could be promised for, were it begun at its start. Nothing is stored. */
 export async function promiseForNew(db: Database, studioId: number, request: BatchToComeRequest, now: number, search: Search): Promise<DateEstimate | Refusal> {
   const facts = readPlanFacts(db, studioId)

@@ -4,6 +4,7 @@ import { readPlanFacts } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { handsOf } from '~~/server/planning/hands'
 import { memberNames } from '~~/server/services/member-names'
+import { slippingPromises } from '~~/server/services/promises'
 import { peak, placeUses } from '~~/server/services/week-places'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
@@ -106,20 +107,21 @@ function placeLoad(facts: PlanFacts, spans: readonly Span[], now: number): Place
 }
 
 function batchLoads(db: Database, facts: PlanFacts, now: number): BatchLoad[] {
-  const rows = db.select({ id: batch.id, name: batch.name, beganAt: batch.startsAt, order: order.name, dueAt: order.dueAt }).from(batch).leftJoin(order, eq(order.id, batch.orderId))
+  const rows = db.select({ id: batch.id, name: batch.name, beganAt: batch.startsAt, order: order.name, orderId: order.id, dueAt: order.dueAt }).from(batch).leftJoin(order, eq(order.id, batch.orderId))
     .where(scoped(batch, facts.owner.id, isNull(batch.closedAt))).orderBy(asc(batch.startsAt), asc(batch.id)).all()
   const batchOf = new Map(facts.pieces.map(each => [each.id, each.batchId]))
   const pieceOf = new Map(facts.steps.map(step => [step.id, step.pieceId]))
   const entries = new Map(facts.last.map(entry => [entry.turnId, entry]))
   const doubts = doubtOfFilms(db, facts.owner.id, now)
-  return rows.flatMap((row) => {
+  const slipping = slippingPromises(db, facts.owner.id)
+  return rows.flatMap(({ orderId, ...row }) => {
     const pieces = facts.pieces.filter(each => each.batchId === row.id)
     if (pieces.length === 0) return []
     const turns = facts.turns.filter(turn => batchOf.get(pieceOf.get(turn.stepId) ?? 0) === row.id)
     const planned = turns.flatMap(turn => entries.get(turn.id) ?? [])
     const whole = turns.length > 0 && planned.length === turns.length
     const endsAt = whole ? Math.max(...planned.map(entry => entry.endsAt)) : null
-    return [{ ...row, pieces: pieces.length, endsAt, latestAt: endsAt === null ? null : endsAt + (doubts.get(row.id) ?? 0), left: turns.length, without: turns.length - planned.length }]
+    return [{ ...row, pieces: pieces.length, endsAt, latestAt: endsAt === null ? null : endsAt + (doubts.get(row.id) ?? 0), left: turns.length, without: turns.length - planned.length, slipping: slipping.get(orderId ?? 0) ?? null }]
   })
 }
 

@@ -1,3 +1,4 @@
+import type { PromiseStanding } from '#shared/schemas/promise'
 import type { PlaceKind } from '#shared/terms'
 
 /** A day of the week to come, local. `closed` names why nobody works: a closure's name, or '' for a day without hours. */
@@ -11,7 +12,7 @@ export interface PlaceLoad { kind: PlaceKind, capacity: number, days: Load[] }
 
 /**
  * A batch against its date. `endsAt` null while something of it has no time in the plan (`without` counts it) or nothing
- * is left to do; `latestAt` adds the doubt of what is drying now.
+ * is left to do; `latestAt` adds the doubt of what is drying now. `slipping`: the promise of its order, when it slips.
  */
 export interface BatchLoad {
   id: number
@@ -24,6 +25,7 @@ export interface BatchLoad {
   latestAt: number | null
   left: number
   without: number
+  slipping: PromiseStanding | null
 }
 
 /** What the page rests on, and how old it is. */

@@ -1,13 +1,16 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { cause, openHours, order, promise, promiseWatch, reminder } from '~~/db/schema'
-import { notePromise, reckonPromises } from '~~/server/planning/promise-watch'
+import { batch, cause, openHours, order, promise, promiseWatch, reminder } from '~~/db/schema'
+import { reckonPromises, savesPromise, watchPromises } from '~~/server/planning/promise-watch'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { searchHere } from '~~/server/planning/search'
 import { tellingListener } from '~~/server/reminders/wanted'
 import { startBatch } from '~~/server/services/batches'
 import { changeBasis, readBasis } from '~~/server/services/promise-basis'
 import { makePromise, promiseForNew, promiseState } from '~~/server/services/promises'
+import { weekLoad } from '~~/server/services/week-load'
+import { studioZone } from '#shared/time'
+import { slipText } from '#shared/words/promise'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday.
@@ -26,6 +29,20 @@ async function studioWith(orderName: string | null = 'Fair') {
   return { ...studio, batchId: started.batchId }
 }
 
+/** The earliest of some days between two instants by which an order is ready without one batch, though not with it; null when there is none. */
+async function savesPromiseAt({ db, studioId, batchId }: Pick<Studio, 'db' | 'studioId' | 'batchId'>, other: number, from: number, to: number): Promise<number | null> {
+  const row = db.select({ id: batch.id, orderId: batch.orderId }).from(batch).all().find(each => each.id === batchId)
+  for (let share = 0.1; share < 1; share += 0.1) {
+    const promisedAt = Math.round(from + (to - from) * share)
+    db.update(order).set({ promisedAt }).where(eq(order.id, row?.orderId ?? 0)).run()
+    db.insert(promise).values({ studioId, orderId: row?.orderId ?? 0, madeAt: now, likelyAt: promisedAt, dateAt: promisedAt, causes: {} }).run()
+    const holds = await savesPromise(db, studioId, row?.orderId ?? 0, other, now, searchHere)
+    db.delete(promise).run()
+    if (holds) return promisedAt
+  }
+  return null
+}
+
 type Studio = Awaited<ReturnType<typeof studioWith>>
 const ask = async ({ db, studioId, batchId }: Studio, at = now) => {
   const state = await promiseState(db, studioId, batchId, at, searchHere)
@@ -35,11 +52,9 @@ const ask = async ({ db, studioId, batchId }: Studio, at = now) => {
 const give = ({ db, studioId, batchId }: Studio, dateAt: number, orderName?: string) => makePromise(db, studioId, batchId, { dateAt: new Date(dateAt).toISOString(), orderName }, now, () => promiseState(db, studioId, batchId, now, searchHere))
 
 /** One look of the watch, written down; how many promises it looked at. */
-const look = async ({ db, studioId }: Pick<Studio, 'db' | 'studioId'>, at: number) => {
-  const reckoned = await reckonPromises(db, studioId, at, searchHere)
-  for (const each of reckoned) notePromise(db, studioId, each, at)
-  return reckoned.length
-}
+const look = ({ db, studioId }: Pick<Studio, 'db' | 'studioId'>, at: number) => watchPromises(db, studioId, at, {
+  reckon: () => reckonPromises(db, studioId, at, searchHere), saves: (orderId, batchId) => savesPromise(db, studioId, orderId, batchId, at, searchHere),
+})
 
 describe('a date for an order', () => {
   it('is never before the plan, likely before cautious, and the promise is the end of a working day', async () => {
@@ -132,5 +147,35 @@ describe('a promise', () => {
     await replan(db, studioId, now + 5 * minute, atOnce)
     expect(await look(studio, now + 10 * minute)).toBe(0)
     expect(await look(studio, now + 17 * minute)).toBe(1)
+  })
+
+  it('names, of all others, the first batch that would save it, and it would: the date holds without that work', async () => {
+    const studio = await studioWith()
+    const { db, studioId, members, places, scheduleOf } = studio
+    const alone = (await ask(studio)).estimate.cautiousAt
+    const starts = (name: string, size: number) => {
+      const made = startBatch(db, studioId, { member: members.maker }, {
+        clientKey: `start-${name}`, name, scheduleId: scheduleOf('painted-waxed-box'), pieces: Array.from({ length: size }, (_, i) => `${name} ${i + 1}`), sizeUnits: 1,
+        placeId: places.shelf, order: { name: `${name} order`, dueAt: null }, startsAt: new Date(now).toISOString(), oldObject: false,
+      }, now)
+      return made.ok ? made.batchId : 0
+    }
+    // Five that hardly matter come before the one that does: the lightest are tried first, and these are of equal weight.
+    for (const name of ['A', 'B', 'C', 'D', 'E']) starts(name, 1)
+    const heavy = starts('Heavy', 8)
+    await replan(db, studioId, now, atOnce)
+    const among = (await ask(studio)).estimate.cautiousAt
+    expect(among).toBeGreaterThan(alone + hour)
+    // A date that all together miss and that would be kept without the work of some one batch.
+    const withoutHeavy = await savesPromiseAt(studio, heavy, alone, among)
+    expect(withoutHeavy).not.toBeNull()
+    await give(studio, withoutHeavy ?? 0)
+    expect(await look(studio, now + minute)).toBe(1)
+    const rescue = db.select().from(promiseWatch).get()?.rescueBatchId ?? 0
+    expect(await savesPromise(db, studioId, 1, rescue, now + minute, searchHere)).toBe(true)
+    const row = weekLoad(db, studioId, now + minute)?.batches.find(each => each.id === studio.batchId)
+    expect(row?.slipping).toMatchObject({ slipping: true, rescue: expect.any(String) })
+    if (!row?.slipping) throw new Error('The row of a batch whose promise slips says so.')
+    expect(slipText('Fair', row.slipping, { now, zone: studioZone('UTC') })).toMatch(/^Promised .*\. It slips: nine of ten ways take till .*\. Tell whoever ordered Fair\. Say no to it, or move \w+ back: then the date holds\.$/)
   })
 })

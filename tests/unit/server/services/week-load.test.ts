@@ -110,7 +110,7 @@ describe('the sentence at the top', () => {
     expect(Object.values(fullestSentence(fullest({ people, places: [] }, 'People', placeKindsText), days)).join(' ')).toBe('Oda is over full today. At the worst 10 h of 9 h: somebody else must do it, or it waits.')
   })
   it('counts the batches planned past their dates, and names the furthest', () => {
-    const batch = { id: 1, name: 'Ledgers', pieces: 2, order: null, beganAt: 0, dueAt: 10 * day, endsAt: 12 * day, latestAt: null, left: 3, without: 0 }
+    const batch = { id: 1, name: 'Ledgers', pieces: 2, order: null, beganAt: 0, dueAt: 10 * day, endsAt: 12 * day, latestAt: null, left: 3, without: 0, slipping: null }
     expect(lateSentence([{ ...batch, endsAt: 9 * day }, { ...batch, dueAt: null }])).toBeNull()
     expect(lateSentence([batch, { ...batch, endsAt: 9 * day }])).toBe('1 of 2 batches is planned past its date: Ledgers, 2 days late.')
     expect(lateSentence([batch, { ...batch, name: 'Trays', endsAt: 13 * day }])).toBe('2 of 2 batches are planned past their date; the furthest is Trays, 3 days late.')
