@@ -1,5 +1,9 @@
 import { grouped } from '#shared/grouped'
+import { openSpans } from '#shared/open-hours'
+import type { OpenHours } from '#shared/open-hours'
 import type { PlaceKind, StepKind } from '#shared/terms'
+import { localDate, startOfLocalDay } from '#shared/time'
+import type { StudioZone } from '#shared/time'
 
 /**
  * Why a turn lies elsewhere than people last heard. Only what the plan's own facts prove is named; else it says that it fits better now.
@@ -29,8 +33,15 @@ const minute = 60_000
 const hour = 60 * minute
 const day = 24 * hour
 
-/** A move is told for so long. */
-export const toldForMs = 2 * hour
+/** Where nobody works for so long, a move is told for a day (planning value). */
+export const farthestTold = 14 * day
+
+/** Until when a move is told, ms UTC: to the end of the first working day that begins after it, so that whoever comes to work meets it once. */
+export function toldTill(movedAt: number, hours: OpenHours, zone: StudioZone): number {
+  const spans = openSpans(hours, zone, startOfLocalDay(movedAt, zone), movedAt + farthestTold)
+  const days = [...grouped(spans, span => localDate(span.fromAt, zone)).values()]
+  return days.find(own => own[0]!.fromAt >= movedAt)?.at(-1)?.toAt ?? movedAt + day
+}
 
 /**
  * Whether a move is worth telling (planning values): half an hour for what was or is to begin within a day, four hours

@@ -2,10 +2,11 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { MoveCauses } from '~~/server/planning/move-causes'
 import type { StudioProblem } from '~~/server/planning/problem'
 import type { WaitsToCome } from '~~/server/planning/waits'
-import { isNoticed, toldForMs } from '#shared/plan-moves'
+import { isNoticed, toldTill } from '#shared/plan-moves'
 import type { MoveCause } from '#shared/plan-moves'
 import { readyTimes } from '#shared/planning/ready'
 import type { Plan } from '#shared/planning/types'
+import { studioZone } from '#shared/time'
 
 const minute = 60_000
 
@@ -26,6 +27,8 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
   const causes = new MoveCauses({ facts, given, made, toCome, names, now, ready })
   const last = new Map(facts.last.map(entry => [entry.turnId, entry]))
   const told = new Map(facts.lastChanges.map(change => [change.turnId, change]))
+  const zone = studioZone(facts.owner.zone)
+  const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
   const waiting = new Set(facts.turns.filter(turn => turn.status === 'waiting').map(turn => turn.id))
   for (const entry of made.entries) {
     const turnId = Number(entry.activity.slice(1))
@@ -38,7 +41,7 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
     const moved = isNoticed(heardAt, isAt, now)
     if (!moved) found.toldAt.set(turnId, heardAt)
     const earlier = told.get(turnId)
-    const fresh = earlier?.wasAt != null && earlier.movedAt !== null && now - earlier.movedAt < toldForMs ? { ...earlier, wasAt: earlier.wasAt, movedAt: earlier.movedAt } : null
+    const fresh = earlier?.wasAt != null && earlier.movedAt !== null && now < toldTill(earlier.movedAt, hours, zone) ? { ...earlier, wasAt: earlier.wasAt, movedAt: earlier.movedAt } : null
     const wasAt = fresh?.wasAt ?? heardAt
     if (!isNoticed(wasAt, isAt, now)) continue
     if (moved) found.moves.push({ turnId, wasAt, isAt, movedAt: now, why: causes.of(turnId, heardAt, isAt) })

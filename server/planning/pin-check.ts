@@ -1,11 +1,14 @@
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId } from '~~/server/planning/lags'
 import type { StepWork } from '~~/server/planning/lags'
+import { familyOf } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
+import { reservedFor } from '~~/server/planning/reserved'
+import type { Reserved } from '~~/server/planning/reserved'
 import { keptOut } from '~~/server/planning/vapour'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { overlaps } from '#shared/planning/occupied'
-import type { PlanProblem } from '#shared/planning/types'
+import type { Fixed, PlanProblem } from '#shared/planning/types'
 import type { Clock } from '#shared/time'
 import { pinWords } from '#shared/words/pins'
 
@@ -13,6 +16,9 @@ const minute = 60_000
 
 /** A turn with the time and the hands it is to be given, minutes from the problem's zero. */
 export interface Wanted { turnId: number, start: number, end: number, hands: readonly string[] }
+
+/** With the time its hands are taken, set-up and clean-up with it. */
+interface Held extends Wanted { from: number, till: number }
 
 export interface PinStudio { facts: PlanFacts, given: StudioProblem, toCome: WaitsToCome, names: ReadonlyMap<number, string>, clock: Clock }
 
@@ -23,10 +29,15 @@ export interface PinStudio { facts: PlanFacts, given: StudioProblem, toCome: Wai
  */
 export function pinClash(studio: PinStudio, wanted: readonly Wanted[]): string | null {
   const works = new Map(studio.given.works.flatMap(work => work.turns.map(turn => [turn.id, work] as const)))
-  for (const each of wanted) {
-    const work = works.get(each.turnId)
+  const own = new Set(wanted.map(each => activityId(each.turnId)))
+  const others = studio.given.problem.fixed.filter(each => !own.has(each.activity))
+  const reserved = reservedFor(studio.given.works, [...others, ...wanted.map(each => ({ activity: activityId(each.turnId), start: each.start, resources: each.hands }))], familyOf)
+  for (const given of wanted) {
+    const work = works.get(given.turnId)
     if (!work) return pinWords.notPlanned
-    const clash = hoursClash(studio, each, work) ?? lagClash(studio, each, work, wanted) ?? fixedClash(studio, each, work, wanted) ?? apartClash(studio, each, work)
+    const around = reserved.filter(span => span.activity === activityId(given.turnId))
+    const each = { ...given, from: Math.max(Math.min(0, given.start), Math.min(given.start, ...around.map(span => span.start))), till: Math.max(given.end, ...around.map(span => span.end)) }
+    const clash = hoursClash(studio, each, work) ?? lagClash(studio, each, work, wanted) ?? fixedClash(studio, each, work, { others, reserved }) ?? apartClash(studio, each, work)
     if (clash !== null) return clash
   }
   return null
@@ -35,9 +46,9 @@ export function pinClash(studio: PinStudio, wanted: readonly Wanted[]): string |
 const nameOf = ({ names }: PinStudio, hand: string) => names.get(Number(hand.slice(1))) ?? ''
 const instant = ({ given }: PinStudio, minutes: number) => given.zeroAt + minutes * minute
 
-function hoursClash(studio: PinStudio, { start, end, hands }: Wanted, { step }: StepWork): string | null {
-  const until = step.mayRunOver ? start + 1 : end
-  const works = (hand: string) => studio.given.hands.find(each => each.id === hand)?.open.some(([from, to]) => start >= from && until <= to) ?? false
+function hoursClash(studio: PinStudio, { start, from, till, hands }: Held, { step }: StepWork): string | null {
+  const until = step.mayRunOver ? start + 1 : till
+  const works = (hand: string) => studio.given.hands.find(each => each.id === hand)?.open.some(([opens, shuts]) => from >= opens && until <= shuts) ?? false
   if (hands.length < step.hands) return pinWords.hours(null, step.name)
   const away = hands.find(hand => !works(hand))
   return away === undefined ? null : pinWords.hours(studio.given.hands.some(each => each.may(step.kind) && works(each.id)) ? nameOf(studio, away) : null, step.name)
@@ -82,15 +93,15 @@ function lagClash(studio: PinStudio, { turnId, start }: Wanted, work: StepWork, 
 }
 
 /** Against what stands where it stands: work in hand and what is pinned. */
-function fixedClash(studio: PinStudio, { turnId, start, end, hands }: Wanted, { step }: StepWork, wanted: readonly Wanted[]): string | null {
+function fixedClash(studio: PinStudio, { turnId, end, from, till, hands }: Held, { step }: StepWork, { others, reserved }: { others: readonly Fixed[], reserved: readonly Reserved[] }): string | null {
   const { problem, works } = studio.given
   const length = new Map(problem.activities.map(each => [each.id, each.minutes]))
   const stepName = (activity: string) => works.find(work => work.turns.some(turn => activityId(turn.id) === activity))?.step.name ?? ''
-  const own = new Set(wanted.map(each => activityId(each.turnId)))
-  for (const fixed of problem.fixed.filter(each => !own.has(each.activity))) {
+  for (const fixed of others) {
     const stretch = { start: fixed.start, end: fixed.start + (length.get(fixed.activity) ?? 0) }
     const hand = fixed.resources.find(each => hands.includes(each))
-    if (hand !== undefined && overlaps(stretch, start, end)) return pinWords.taken(nameOf(studio, hand), stepName(fixed.activity))
+    const around = reserved.filter(each => each.activity === fixed.activity && each.hand === hand)
+    if (hand !== undefined && [stretch, ...around].some(each => overlaps(each, from, till))) return pinWords.taken(nameOf(studio, hand), stepName(fixed.activity))
     const after = problem.lags.find(lag => lag.from === activityId(turnId) && lag.to === fixed.activity)
     if (after && fixed.start < end + (after.windows[0]?.[0] ?? 0)) return pinWords.followed(step.name, stepName(fixed.activity))
   }

@@ -4,13 +4,14 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId, lagsOf } from '~~/server/planning/lags'
 import type { LagFilm, LagInput, StepWork } from '~~/server/planning/lags'
 import { dustApart, dustKeptOff } from '~~/server/planning/dust'
+import { openWithout, reservedFor } from '~~/server/planning/reserved'
 import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { minutesFrom } from '#shared/drying/waits'
 import { grouped } from '#shared/grouped'
 import { planProblem } from '#shared/planning/problem'
 import type { PlanInput } from '#shared/planning/problem'
-import type { PlanProblem } from '#shared/planning/types'
+import type { Fixed, PlanProblem } from '#shared/planning/types'
 import type { PlaceKind } from '#shared/terms'
 import { studioZone } from '#shared/time'
 
@@ -39,15 +40,17 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
   const known = new Set(planned.flatMap(work => work.turns.map(turn => activityId(turn.id))))
   const asked = lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from)))
+  const fixed = fixedOf(planned, facts, toCome, hands, zeroAt)
+  const reserved = reservedFor(planned, fixed, familyOf)
   const input: PlanInput = {
     activities: planned.flatMap(work => work.turns.map(turn => activity(work.step, turn, handsFor(work, facts, toCome, hands)))),
-    resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: each.open })), ...placesOf(facts)],
+    resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: openWithout(each.open, reserved.filter(span => span.hand === each.id)) })), ...placesOf(facts)],
     lags: asked,
     rests: restsOf(planned, facts, lags, known),
     apart: [...dustApart(planned, toCome), ...vapourApart(planned, facts, toCome)],
     families: familiesOf(planned),
     jobs: jobsOf(planned, facts, zeroAt),
-    fixed: fixedOf(planned, facts, toCome, hands, zeroAt),
+    fixed,
     horizon: horizonDays * 24 * 60,
     previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
   }
@@ -150,7 +153,7 @@ function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): N
 }
 
 /** Work in hand stays with who is at it; a pin stays where somebody put it. */
-function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[], zeroAt: number): NonNullable<PlanInput['fixed']> {
+function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[], zeroAt: number): Fixed[] {
   return works.flatMap(work => work.turns.flatMap((turn) => {
     const { step } = work
     const able = handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind))

@@ -7,7 +7,6 @@ import { activityId } from '~~/server/planning/lags'
 import { pinClash } from '~~/server/planning/pin-check'
 import type { PinStudio, Wanted } from '~~/server/planning/pin-check'
 import { studioProblem } from '~~/server/planning/problem'
-import type { StudioProblem } from '~~/server/planning/problem'
 import type { Search } from '~~/server/planning/search'
 import { WaitsToCome } from '~~/server/planning/waits'
 import { memberNames } from '~~/server/services/member-names'
@@ -45,7 +44,7 @@ export async function checkPin(db: Database, studioId: number, body: PinBody, no
   if (startsAt < given.zeroAt) return impossible(pinWords.past(given.zeroAt, studio.clock), { startsAt: pinWords.past(given.zeroAt, studio.clock) })
   const wanted = wishes(studio, body, startsAt)
   if (wanted === null) return impossible(pinWords.notPlanned)
-  const clash = pinClash(studio, wanted) ?? await trialClash(given, wanted, search)
+  const clash = pinClash(studio, wanted) ?? await trialClash(studio, wanted, search)
   return clash === null ? { ok: true, zeroAt: given.zeroAt, wanted } : impossible(clash, { startsAt: clash })
 }
 
@@ -69,7 +68,7 @@ export async function pinTurns(db: Database, studioId: number, memberId: number,
     const refusal = notWaiting(tx, studioId, body.turnIds)
     if (refusal) return refusal
     tx.delete(pin).where(scoped(pin, studioId, inArray(pin.turnId, body.turnIds))).run()
-    tx.insert(pin).values(wanted.map(each => ({ studioId, turnId: each.turnId, startsAt: zeroAt + each.start * minute, memberId: each.hands[0] ? Number(each.hands[0].slice(1)) : null, madeAt: now, madeByMemberId: memberId }))).run()
+    tx.insert(pin).values(wanted.map(each => ({ studioId, turnId: each.turnId, startsAt: zeroAt + each.start * minute, memberId: memberOf(each.hands), madeAt: now, madeByMemberId: memberId }))).run()
     return { ok: true }
   })
 }
@@ -93,14 +92,17 @@ function wishes({ facts, given }: PinStudio, { turnIds, memberId }: PinBody, sta
 }
 
 /** What else would be left without a start, or miss its window, were it so. */
-async function trialClash(given: StudioProblem, wanted: readonly Wanted[], search: Search): Promise<string | null> {
-  const fixed = [...given.problem.fixed.filter(each => !wanted.some(wish => activityId(wish.turnId) === each.activity)), ...wanted.map(each => ({ activity: activityId(each.turnId), start: each.start, resources: each.hands }))]
+async function trialClash({ facts, given, toCome, clock: { now } }: PinStudio, wanted: readonly Wanted[], search: Search): Promise<string | null> {
+  const pins = wanted.map(({ turnId, start, hands }) => ({ id: 0, studioId: facts.owner.id, turnId, startsAt: given.zeroAt + start * minute, memberId: memberOf(hands), actId: null, madeAt: null, madeByMemberId: null }))
+  const pinned = studioProblem({ ...facts, pins: [...facts.pins, ...pins] }, toCome, now)
   const before = await search('before', given.problem, trial)
-  const after = await search('after', { ...given.problem, fixed }, trial)
+  const after = await search('after', pinned.problem, trial)
   if (!before.ok || !after.ok) return pinWords.noPlanWithIt
   const known = new Set(clashSentences(before.plan, given))
-  return clashSentences(after.plan, given).find(each => !known.has(each)) ?? null
+  return clashSentences(after.plan, pinned).find(each => !known.has(each)) ?? null
 }
+
+const memberOf = (hands: readonly string[]) => (hands[0] ? Number(hands[0].slice(1)) : null)
 
 /** Lets turns go again that were pinned together with this one. */
 export function unpin(db: Database, studioId: number, id: number): { ok: true } | Refusal {

@@ -26,10 +26,11 @@ export function planState(db: Database, studioId: number, now: number): PlanStat
   const days = daysOf(facts, blocks, now)
   const until = days[days.length - 1]?.closesAt ?? now
   const names = memberNames(db, studioId)
+  const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
   return {
     at: now, planMadeAt: current?.madeAt ?? null, days,
     people: facts.members.map(({ id }) => ({ memberId: id, name: names.get(id) ?? '', blocks: blocks.filter(block => block.memberId === id && block.fromAt < until && block.toAt > now) })),
-    places: placesOf(db, facts, now, until), moved: movedTurns(db, studioId, now),
+    places: placesOf(db, facts, now, until), moved: movedTurns(db, studioId, now, hours, studioZone(facts.owner.zone)),
     objective: current ? partsOf(current.objective) : null,
   }
 }

@@ -8,6 +8,7 @@ import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { grouped } from '#shared/grouped'
 import { openSpans } from '#shared/open-hours'
+import type { OpenHours } from '#shared/open-hours'
 import type { PieceState, SessionState, StudioState } from '#shared/schemas/piece-state'
 import { addDays, fromLocal, localDate, startOfLocalDay, studioZone } from '#shared/time'
 
@@ -17,26 +18,30 @@ import { addDays, fromLocal, localDate, startOfLocalDay, studioZone } from '#sha
  */
 export function studioState(db: Database, owner: StudioRow, now: number): StudioState {
   const pieces = pieceStates(db, owner.id, null)
+  const hours = studioHours(db, owner.id)
   return {
     at: now, revision: owner.revision,
     studio: { id: owner.id, name: owner.name, zone: owner.zone, units: owner.units },
-    hours: hoursToday(db, owner, now),
+    hours: hoursToday(hours, owner, now),
     rooms: roomStates(db, owner.id, now),
     places: placeStates(db, owner.id),
     pieces,
     sessions: sessionStates(db, owner.id, pieces),
-    moved: movedTurns(db, owner.id, now),
+    moved: movedTurns(db, owner.id, now, hours, studioZone(owner.zone)),
     rags: db.select({ id: ragDuty.id, roomId: ragDuty.roomId, room: room.name, sinceAt: ragDuty.lastOilAt }).from(ragDuty).innerJoin(room, eq(room.id, ragDuty.roomId))
       .where(scoped(ragDuty, owner.id, isNull(ragDuty.answeredAt))).all(),
   }
 }
 
-function hoursToday(db: Database, owner: StudioRow, now: number) {
+const studioHours = (db: Database, studioId: number): OpenHours => ({
+  open: db.select().from(openHours).where(scoped(openHours, studioId, isNull(openHours.memberId))).all(),
+  closed: db.select().from(closure).where(scoped(closure, studioId, isNull(closure.memberId))).all(),
+})
+
+function hoursToday(hours: OpenHours, owner: StudioRow, now: number) {
   const zone = studioZone(owner.zone)
-  const open = db.select().from(openHours).where(scoped(openHours, owner.id, isNull(openHours.memberId))).all()
-  const closed = db.select().from(closure).where(scoped(closure, owner.id, isNull(closure.memberId))).all()
   const dayEnd = fromLocal(addDays(localDate(now, zone), 1), 0, zone)
-  return openSpans({ open, closed }, zone, startOfLocalDay(now, zone), dayEnd).map(span => ({ opensAt: span.fromAt, closesAt: span.toAt }))
+  return openSpans(hours, zone, startOfLocalDay(now, zone), dayEnd).map(span => ({ opensAt: span.fromAt, closesAt: span.toAt }))
 }
 
 /** The sessions of the plan in force that still have something waiting, by the turns that pieces show. */

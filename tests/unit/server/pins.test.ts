@@ -65,6 +65,23 @@ describe('pinning', () => {
     expect(await pinAt(studio, turnsOf(studio, 'glue-box'), at)).toMatchObject({ ok: false, reason: 'conflict', message: 'It has been begun: work in hand stays where it is.' })
   })
 
+  it('takes the hands for the set-up before a pinned row and the clean-up after it', async () => {
+    const studio = await boxes()
+    const { db } = studio
+    db.update(pieceStep).set({ setupMin: 20, cleanMin: 15 }).where(eq(pieceStep.key, 'lid-1')).run()
+    const lids = turnsOf(studio, 'lid-1')
+    const at = Date.parse('2026-04-08T11:00:00Z')
+    // Wednesday opens at 8:30: at 8:40 there is no time to set up.
+    expect(await pinAt(studio, lids, Date.parse('2026-04-08T08:40:00Z'))).toMatchObject({ message: expect.stringContaining('works for so long then') })
+    expect(await pinAt(studio, lids, at, studio.members.maker.id)).toEqual({ ok: true })
+    expect(await replan(db, studio.studioId, now, atOnce)).toMatchObject({ ok: true })
+    // Two lids of six minutes from 11:00, set up from 10:40, cleaned up till 11:27: the maker has nothing else then.
+    const others = db.select().from(planEntry).where(eq(planEntry.memberId, studio.members.maker.id)).all().filter(entry => !lids.includes(entry.turnId))
+    expect(others.filter(entry => entry.startsAt < at + 27 * minute && entry.endsAt > at - 20 * minute)).toEqual([])
+    // Gluing at 10:45 would be in the middle of the set-up.
+    expect(await pinAt(studio, turnsOf(studio, 'glue-box').slice(0, 1), at - 15 * minute, studio.members.maker.id)).toMatchObject({ message: 'The maker has first paint on the lid top then, which stays where it is.' })
+  })
+
   it('is absent for a turn of another studio', async () => {
     const studio = await boxes()
     expect(await pinAt({ ...studio, studioId: studio.studioId + 1 }, turnsOf(studio, 'lid-1'), now + hour)).toMatchObject({ ok: false, reason: 'absent' })

@@ -22,7 +22,7 @@ const turnOf = ({ db }: Studio, pieceId: number, key: string) => {
 }
 const startOf = ({ db }: Studio, turnId: number) => db.select().from(planEntry).where(eq(planEntry.turnId, turnId)).get()?.startsAt ?? 0
 const planAt = async (studio: Studio, at: number) => expect(await replan(studio.db, studio.studioId, at, atOnce)).toMatchObject({ ok: true })
-const movesAt = (studio: Studio, at: number) => movedTurns(studio.db, studio.studioId, at)
+const movesAt = (studio: Studio, at: number) => movedTurns(studio.db, studio.studioId, at, { open: studio.db.select().from(openHours).all(), closed: [] }, zone)
 const whyOf = (studio: Studio, turnId: number, at: number) => movesAt(studio, at).find(each => each.turnId === turnId)?.why
 
 /** A box whose lid has its first paint since ten, planned. */
@@ -57,7 +57,7 @@ describe('what moved', () => {
     expect(moveText(told ?? [], { now: now + 20 * minute, zone }, 'metric')).toMatch(/^Turning over of Box 1 moves from .* to .*: Bench falls to 9 °C, and first paint on the lid top is not dry enough before .*\.$/)
   })
 
-  it('is told for two hours, against what was first told, and goes when the turn comes back', async () => {
+  it('is told till the next working day is over, against what was first told, and goes when the turn comes back', async () => {
     const { studio, turnLid } = await painted()
     const { db, studioId } = studio
     const was = startOf(studio, turnLid)
@@ -70,7 +70,10 @@ describe('what moved', () => {
     db.update(pin).set({ startsAt: was + 2 * hour }).run()
     await planAt(studio, two)
     expect(movesAt(studio, two).find(each => each.turnId === turnLid)).toMatchObject({ wasAt: was, isAt: was + 2 * hour })
-    expect(movesAt(studio, two + 2 * hour)).toEqual([])
+    // Moved on Tuesday at 13:05; Wednesday ends at 17:30.
+    const evening = Date.parse('2026-04-08T17:30:00Z')
+    expect(movesAt(studio, evening - minute).some(each => each.turnId === turnLid)).toBe(true)
+    expect(movesAt(studio, evening)).toEqual([])
     db.update(pin).set({ startsAt: was }).run()
     await planAt(studio, three)
     expect(movesAt(studio, three).some(each => each.turnId === turnLid)).toBe(false)

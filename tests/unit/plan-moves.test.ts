@@ -1,0 +1,24 @@
+import { describe, expect, it } from 'vitest'
+import { toldTill } from '#shared/plan-moves'
+import { studioZone } from '#shared/time'
+
+const zone = studioZone('UTC')
+const at = (text: string) => Date.parse(`${text}:00Z`)
+// Monday to Friday, with a break at noon.
+const hours = { open: [1, 2, 3, 4, 5].flatMap(weekday => [{ weekday, fromMin: 510, toMin: 720 }, { weekday, fromMin: 750, toMin: 1050 }]), closed: [] }
+
+describe('a move', () => {
+  it.each([
+    // A Tuesday: before work it is that day, in it or after it the next, on a Friday the Monday after.
+    ['2026-04-07T06:00', '2026-04-07T17:30'],
+    ['2026-04-07T08:30', '2026-04-07T17:30'],
+    ['2026-04-07T12:10', '2026-04-08T17:30'],
+    ['2026-04-07T22:00', '2026-04-08T17:30'],
+    ['2026-04-10T15:00', '2026-04-13T17:30'],
+  ])('made at %s is told till %s, the end of the first working day that begins after it', (moved, till) => {
+    expect(toldTill(at(moved), hours, zone)).toBe(at(till))
+  })
+  it('is told for a day where nobody works', () => {
+    expect(toldTill(at('2026-04-07T12:00'), { open: [], closed: [] }, zone)).toBe(at('2026-04-08T12:00'))
+  })
+})
