@@ -3,9 +3,11 @@ import { cpus } from 'node:os'
 import { parseArgs } from 'node:util'
 import { benchClassics } from './bench-plan/classics'
 import { benchLag } from './bench-plan/lag'
+import { benchMemory } from './bench-plan/memory'
+import { benchReplan } from './bench-plan/replan'
 import { tableOf } from './bench-plan/row'
 import { benchSets } from './bench-plan/sets'
-import { benchFirstPlans, benchReplan } from './bench-plan/studio'
+import { benchFirstPlans } from './bench-plan/studio'
 import { benchWeeks } from './bench-plan/weeks'
 import type { Row } from './bench-plan/row'
 
@@ -39,6 +41,7 @@ async function main(args: string[]): Promise<number> {
     console.log(`${row.met === null ? '-' : row.met ? 'kept' : 'MISSED'} ${row.measure}: ${row.measured} (bar ${row.bar}, aim ${row.aim})`)
   }
   benchFirstPlans(told)
+  benchMemory(told)
   benchReplan(told)
   await benchLag(told)
   benchClassics(told)
