@@ -55,5 +55,5 @@ export function useJob(job: ComputedRef<Job>) {
     return true
   }
 
-  return { left, when, placeId, problem, title, names, where, moment, films, strip, acts, isLater, choose, busy, studio }
+  return { left, when, placeId, problem, title, names, where, moment, films, film, strip, acts, isLater, choose, busy, studio }
 }

@@ -4,9 +4,10 @@ import { effectOfAct, wets } from '#shared/effects'
 import type { EffectOf } from '#shared/effects'
 import type { ActRequest, TellableKind, VapourAnswers } from '#shared/schemas/act'
 import type { VapourAsked } from '#shared/schemas/vapour'
-import type { PieceState } from '#shared/schemas/piece-state'
+import type { PieceState, StudioState } from '#shared/schemas/piece-state'
+import { movedFilms } from '#shared/moved'
 import { milestoneNames } from '#shared/terms'
-import { effectText, toldWords } from '#shared/words/hands'
+import { effectText, fellowsText, toldWords } from '#shared/words/hands'
 import type { Effect } from '#shared/words/hands'
 import { groupNames } from '#shared/words/group'
 import { groupMoment } from '#shared/verdict/next'
@@ -57,6 +58,14 @@ function questionIn(answer: Told): VapourAsked | null {
   return typeof current === 'object' && current !== null && 'ask' in current && current.ask === 'vapour' ? current as VapourAsked : null
 }
 
+/** What a test taught about films of other pieces, in words; empty where it moved none. */
+function fellowsMoved(before: StudioState | null, after: StudioState | null, own: readonly number[]): string {
+  if (!before || !after) return ''
+  const others = (state: StudioState) => ({ ...state, pieces: state.pieces.filter(piece => !own.includes(piece.id)) })
+  const { count, mostMs } = movedFilms(others(before), others(after))
+  return fellowsText(count, mostMs)
+}
+
 /** What a line on the page keeps of a telling, whatever came of it. */
 const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
 
@@ -93,6 +102,7 @@ function makeTelling(studio: Studio) {
   async function say(telling: Telling, vapour?: VapourAnswers) {
     const base = baseOf(telling)
     const before = wets(telling.kind) ? null : effectNow({ ...base, rootId: null })
+    const stood = studio.state.value
     const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds, vapour)
     const blank = { ...base, clientKey: null, actId: null, rootId: null, effect: '', before, problem: null }
     if (answer.outcome === 'later') return told.add({ ...blank, state: 'later', clientKey: answer.clientKey })
@@ -100,7 +110,8 @@ function makeTelling(studio: Studio) {
     if (question) return wait(telling, question)
     if (answer.outcome === 'refused') return told.add({ ...blank, state: 'refused', problem: Object.values(answer.fields)[0] ?? answer.message })
     const { effect, now } = describe({ ...blank, rootId: answer.actId })
-    return told.add({ ...blank, state: 'told', actId: answer.actId, rootId: answer.actId, effect, before: now })
+    const fellows = telling.kind === 'touch test' ? fellowsMoved(stood, studio.state.value, blank.pieceIds) : ''
+    return told.add({ ...blank, state: 'told', actId: answer.actId, rootId: answer.actId, effect: [effect, fellows].filter(Boolean).join(' '), before: now })
   }
 
   /** The three answers, for everything that waits for them. */

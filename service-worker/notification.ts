@@ -33,7 +33,7 @@ function actionsFor(path: string): Action[] {
   const query = new URL(path, 'https://studio.invalid').searchParams
   if (query.has('rags')) return [{ action: 'flat-outdoors', title: words.flatOutdoors }, { action: 'in-water-can', title: words.inWaterCan }]
   if (query.get('act') === 'coat') return [{ action: 'coat-on', title: words.coatOn }, { action: 'still-tacky', title: words.stillTacky }]
-  return query.has('turn') ? [{ action: 'still-tacky', title: words.stillTacky }] : []
+  return query.has('turn') ? [{ action: 'dry-enough', title: words.dryEnough }, { action: 'still-tacky', title: words.stillTacky }] : []
 }
 
 /** The notification of a push. The tag is the delivery's stable id, so that a repeat replaces itself. */

@@ -1,14 +1,15 @@
 import type { Job, JobPiece } from '#shared/hands'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { FilmState } from '#shared/schemas/piece-state'
-import type { StepKind } from '#shared/terms'
+import type { MilestoneName, StepKind } from '#shared/terms'
 import { actKeys, doneKeys } from '#shared/words/steps'
 import { handsWords } from '#shared/words/hands'
 
 /** One key of a job: what it says, and the act a press of it tells. `needs` is asked for first. */
 export interface ActChoice { label: string, kind: TellableKind, body: ActRequest['body'], hint?: string, needs?: 'reason', perPart?: boolean }
 
-export interface JobActs { main: ActChoice | null, second: ActChoice | null, more: ActChoice[] }
+/** `tests` is the rung that a test by hand may speak about beside the keys; null where the keys themselves ask. */
+export interface JobActs { tests: MilestoneName | null, main: ActChoice | null, second: ActChoice | null, more: ActChoice[] }
 
 /** What the person at the page may do: steps of this kind, and what only makers do. */
 export interface Hands { step: boolean, maker: boolean, solventRoom?: boolean }
@@ -72,9 +73,11 @@ function ranked(job: Job): { act: ActChoice, who: 'step' | 'maker' | 'anybody' }
   if (job.doubtful) return [...tested, { act: { label: actKeys.stripped, kind: 'stripped', body: {}, perPart: true }, who: 'maker' }, ...tacky, done]
   if (job.kind === 'release') return [done, ...tacky, ...tested]
   if (job.kind === 'check') return [done]
-  if (job.due) return [done, notYet, ...tacky, ...tested, ...began]
-  return job.may ? [done, ...tacky, ...began, ...tested] : [...tested, ...tacky, done, ...began]
+  return job.due ? [done, notYet, ...began] : [done, ...began]
 }
+
+/** A test by hand stands beside the keys of work that waits for a film: yes and not yet equally near. */
+const asksByHand = (job: Job) => job.kind === 'work' && !job.doubtful && job.turn.status !== 'doing' && job.turn.step.status !== 'set aside' ? job.tests : null
 
 /**
  * The keys of one job for one person: the common fact first, and what is rare under More. Nothing is offered
@@ -85,7 +88,9 @@ export function actsOf(job: Job, hands: Hands): JobActs {
   const rare = hands.maker ? [...stepActs(job), ...filmActs(filmsOf(job.pieces), hands.solventRoom ?? false)] : []
   // What nothing but a wish speaks for stands under More: it is told, but never pressed by mistake.
   const stuck = job.section === 'waiting' && job.tests === null && job.turn.step.status !== 'set aside'
-  if (stuck) return { main: null, second: null, more: [...mine, ...rare] }
+  const tests = asksByHand(job)
+  // Before it may begin a test is what a hand is there for.
+  if (stuck || (tests !== null && !job.may && !job.due)) return { tests, main: null, second: null, more: [...mine, ...rare] }
   const [main = null, second = null, ...more] = mine
-  return { main, second, more: [...more, ...rare] }
+  return { tests, main, second, more: [...more, ...rare] }
 }

@@ -117,13 +117,21 @@ export const airNote = sqliteTable('air_note', {
   check('air_note_where', sql`(${t.partId} is null) <> (${t.roomId} is null)`), index('air_note_of_part').on(t.partId),
 ])
 
-/** What somebody answered to a piece of advice about a coat, so that it is not asked again; of haze, what a material does here. */
+/**
+ * What somebody answered to a piece of advice, so that it is not asked again: about a coat that is on, or about a turn before it began.
+ * `gapC` is how far the air stood above its dew point when it was about haze, kelvin: that is what a material's own gap is learned from.
+ */
 export const adviceAnswer = sqliteTable('advice_answer', {
   id: id(),
   studioId: studioColumn(),
-  coatId: integer('coat_id').notNull(),
+  coatId: integer('coat_id'),
+  turnId: integer('turn_id'),
   code: text('code').notNull(),
   answer: text('answer').$type<AdviceAnswer>().notNull(),
+  gapC: real('gap_c'),
   memberId: integer('member_id').notNull(),
   at: instant('at').notNull(),
-}, t => [studioKey(t), belongsTo(t, t.coatId, coat), within(t, t.memberId, member), unique().on(t.coatId, t.code), oneOf('advice_answer_word', t.answer, adviceAnswers)])
+}, t => [
+  studioKey(t), belongsTo(t, t.coatId, coat), belongsTo(t, t.turnId, turn), within(t, t.memberId, member), unique().on(t.coatId, t.code), unique().on(t.turnId, t.code),
+  oneOf('advice_answer_word', t.answer, adviceAnswers), check('advice_answer_about', sql`(${t.coatId} is null) <> (${t.turnId} is null)`),
+])

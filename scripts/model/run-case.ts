@@ -30,6 +30,6 @@ export function runCase(given: ModelCase, tools: DryingTools) {
     windows: windows.map(w => ({ opens: iso(w.opensAt), shuts: iso(w.shutsAt) })),
     speed,
     state,
-    advice,
+    advice: advice.map(({ code, text }) => ({ code, text })),
   }
 }

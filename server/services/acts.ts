@@ -7,6 +7,7 @@ import { mayHandle } from '~~/server/services/handling'
 import { refuseByCaution } from '~~/server/services/act-cautions'
 import { makeBatch, refuseRegroup } from '~~/server/services/regroup'
 import { hiddenFrom } from '~~/server/services/private-materials'
+import { refuseWitness } from '~~/server/services/witnesses'
 import { noteStart } from '~~/server/services/vapour-starts'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, conflict, impossible, isRefusal, malformed, notAllowed } from '~~/server/utils/errors'
@@ -104,6 +105,7 @@ function findRefusal(tx: Transaction, studioId: number, teller: Teller, request:
     ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
     ?? checkReferences(tx, studioId, body, 'member' in teller && may(teller.member.role, 'see private mixes'))
     ?? (request.kind === 'regrouped' ? refuseRegroup(tx, studioId, pieces.map(each => each.id), body) : null)
+    ?? refuseWitness(tx, studioId, body)
     ?? refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
 }
 

@@ -10,16 +10,10 @@ import type { Database } from '~~/server/utils/database'
 import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
-import { adviceLines } from '~~/server/services/advice'
-import { wetCoats } from '~~/server/services/vapour-facts'
-import { predictFilms } from '~~/server/work/predict'
-import { roomsOfParts } from '~~/server/work/rooms-of-parts'
 import { foldPieces } from '~~/server/work/refold'
 import type { FoldedPiece } from '~~/server/work/refold'
 import type { LayerLine, PieceDetail } from '#shared/schemas/piece-detail'
 import type { CautionWire } from '#shared/schemas/schedule'
-import { isSolventBorne } from '#shared/vapour/facts'
-import { adviceBesideSolvent } from '#shared/words/advice'
 
 /** One piece with all that was told of it and all that is to come; also one that has left the studio. `now` in ms UTC. */
 export function findPiece(db: Database, studioId: number, reader: Membership, pieceId: number, now: number): PieceDetail | Refusal {
@@ -35,7 +29,7 @@ export function findPiece(db: Database, studioId: number, reader: Membership, pi
     branch: branch && { fromStep: folded.folded.steps.find(step => step.key === branch.fromStep)?.name ?? '', sinceAt: folded.acts.find(each => each.rootId === branch.actId)?.doneAt ?? now, rejoined: branch.rejoinedActId !== null },
     faceNames: readFaceNames(db, studioId, folded), layers: readLayers(db, studioId, pieceId),
     steps: pieceSteps(db, studioId, folded), history: pieceHistory(db, studioId, folded, reader, now),
-    films: readReasons(db, studioId, folded, pieceId, now), cautions: readCautions(db, studioId, pieceId, intakes), intakes,
+    films: readReasons(db, studioId, pieceId, now), cautions: readCautions(db, studioId, pieceId, intakes), intakes,
   }
 }
 
@@ -67,15 +61,10 @@ function readLayers(db: Database, studioId: number, pieceId: number): LayerLine[
   }).sort((a, b) => b.layer - a.layer || b.endedAt - a.endedAt)
 }
 
-/** Why the films on it dry as they do, and what the air has to say about each. */
-function readReasons(db: Database, studioId: number, { parts }: FoldedPiece, pieceId: number, now: number): PieceDetail['films'] {
-  const predicted = predictFilms(db, studioId, [pieceId], now)
-  const roomOf = roomsOfParts(db, studioId, [pieceId])
-  const wet = wetCoats(db, studioId, now)
-  const beside = parts.some(({ id }) => (wet.get(roomOf(id)?.id ?? 0) ?? []).some(coat => isSolventBorne(coat.solvent)))
-  const rates = ratesOf(db, studioId, predicted.map(each => each.coat.id), now)
-  const advice = adviceLines(db, studioId, predicted.map(({ coat: row, prediction }) => ({ id: row.id, versionId: row.materialVersionId, advice: beside ? prediction.advice.map(adviceBesideSolvent) : prediction.advice })))
-  return predicted.map(({ coat: { id } }) => ({ coatId: id, rate: rates.find(each => each.coatId === id) ?? null, advice: advice.get(id) ?? [] }))
+/** Why the films on it dry as they do. */
+function readReasons(db: Database, studioId: number, pieceId: number, now: number): PieceDetail['films'] {
+  const coats = db.select({ id: coat.id }).from(coat).where(scoped(coat, studioId, eq(coat.pieceId, pieceId), isNull(coat.settledAt), isNull(coat.strippedAt))).all()
+  return ratesOf(db, studioId, coats.map(each => each.id), now).map(rate => ({ coatId: rate.coatId, rate }))
 }
 
 /** Of the materials still to come and of those on it that have not settled. */

@@ -1,8 +1,9 @@
 import { asc, eq, isNull, sql } from 'drizzle-orm'
-import { closure, openHours, plan, planSession, ragDuty, room } from '~~/db/schema'
+import { closure, milestone, openHours, plan, planSession, ragDuty, room } from '~~/db/schema'
 import { pieceStates } from '~~/server/services/piece-states'
 import { movedTurns } from '~~/server/services/plan-moves'
 import { placeStates, roomStates } from '~~/server/services/room-states'
+import { witnessStates } from '~~/server/services/witnesses'
 import type { StudioRow } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
@@ -10,6 +11,8 @@ import { grouped } from '#shared/grouped'
 import { openSpans } from '#shared/open-hours'
 import type { OpenHours } from '#shared/open-hours'
 import type { PieceState, SessionState, StudioState } from '#shared/schemas/piece-state'
+import { usualHandTests } from '#shared/words/hand-tests'
+import type { OwnHandTest } from '#shared/words/hand-tests'
 import { addDays, fromLocal, localDate, startOfLocalDay, studioZone } from '#shared/time'
 
 /**
@@ -30,7 +33,16 @@ export function studioState(db: Database, owner: StudioRow, now: number): Studio
     moved: movedTurns(db, owner.id, now, hours, studioZone(owner.zone)),
     rags: db.select({ id: ragDuty.id, roomId: ragDuty.roomId, room: room.name, sinceAt: ragDuty.lastOilAt }).from(ragDuty).innerJoin(room, eq(room.id, ragDuty.roomId))
       .where(scoped(ragDuty, owner.id, isNull(ragDuty.answeredAt))).all(),
+    witnesses: witnessStates(db, owner.id),
+    handTests: ownHandTests(db, owner.id, pieces),
   }
+}
+
+/** The hand tests of the materials that are on something, where they are not the trade's usual ones. */
+function ownHandTests(db: Database, studioId: number, pieces: readonly PieceState[]): OwnHandTest[] {
+  const on = new Set(pieces.flatMap(piece => piece.groups.flatMap(group => group.films.map(film => film.materialVersionId))))
+  return db.select({ versionId: milestone.versionId, milestone: milestone.name, text: milestone.handTest }).from(milestone).where(scoped(milestone, studioId)).all()
+    .filter(each => on.has(each.versionId) && each.text !== usualHandTests[each.milestone])
 }
 
 const studioHours = (db: Database, studioId: number): OpenHours => ({

@@ -10,7 +10,7 @@ export function wallState(state: StudioState): StudioState {
   return {
     ...state,
     rooms: state.rooms.map(room => ({ ...room, air: null, waterSpeed: null, keepOut: room.keepOut && { ...room.keepOut, operatorId: null } })),
-    pieces: state.pieces.map(wallPiece), sessions: [], moved: [], hours: [],
+    pieces: state.pieces.map(wallPiece), sessions: [], moved: [], hours: [], witnesses: [], handTests: [],
   }
 }
 

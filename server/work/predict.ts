@@ -34,8 +34,11 @@ function piecesWith(tx: Transaction, studioId: number, versionIds: readonly numb
     .where(and(scoped(coat, studioId, isNull(coat.settledAt), isNull(coat.strippedAt)), isNotNull(coat.materialVersionId), inArray(coat.materialVersionId, [...versionIds]))).all().map(row => row.pieceId)
 }
 
-/** The same without writing: what the films of some pieces would do. */
-export function predictFilms(db: Reader, studioId: number, pieceIds: readonly number[] | null, now: number): PredictedCoat[] {
+/**
+ * The same without writing: what the films of some pieces would do.
+ * @param hazeGaps the gap to the dew point under which a material edition hazes here, kelvin, where anybody has seen it; only advice asks for it
+ */
+export function predictFilms(db: Reader, studioId: number, pieceIds: readonly number[] | null, now: number, hazeGaps?: ReadonlyMap<number, number>): PredictedCoat[] {
   const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
   const coats = db.select().from(coat).where(scoped(coat, studioId, isNull(coat.settledAt), isNull(coat.strippedAt), pieceIds ? inArray(coat.pieceId, [...pieceIds]) : undefined)).orderBy(asc(coat.endedAt)).all()
   if (!owner || coats.length === 0) return []
@@ -47,6 +50,6 @@ export function predictFilms(db: Reader, studioId: number, pieceIds: readonly nu
   return coats.flatMap((row) => {
     const film = caseOf(row, facts)
     const material = row.materialVersionId === null ? null : benches.materialFor(row.materialVersionId, row.id, film.tests ?? [])
-    return material ? [{ coat: row, prediction: predictCoat(material, film, spansOf(row, facts, clockOf), { now }) }] : []
+    return material ? [{ coat: row, prediction: predictCoat(material, film, spansOf(row, facts, clockOf), { now, hazeGapC: hazeGaps?.get(row.materialVersionId ?? 0) }) }] : []
   })
 }

@@ -1,5 +1,6 @@
 import type { Advice, CoatCase, CoatPrediction } from '#shared/drying/types'
 import type { AirSpan, Climb } from '#shared/drying/ladder'
+import { usualHazeGapC } from '#shared/drying/haze'
 import { dampCeiling, inSpans } from '#shared/drying/refusals'
 import { firstCold, firstThinDewMargin } from '#shared/drying/spells'
 import { lastBefore, trackDewPoint, trackTemp } from '#shared/air/room'
@@ -8,14 +9,13 @@ import { localDay, localTimeOfDay } from '#shared/air/zone'
 import type { AdviceFacts } from '#shared/words/advice'
 import { adviceText, whenText } from '#shared/words/advice'
 
-/** Gap to the dew point under which alcohol and lacquer films haze (20 F, a finisher's rule). */
-const blushGapC = 11.1
 /** How long an oxidising film had better not be covered (a maker of tung-oil varnish: not within a day, better two). */
 const openForMs = 48 * 3_600_000
 /** Coat and ground together slower than this are outside what anybody has measured. */
 const measuredSlowness = 3
 
-interface Asked { way: Climb, coat: CoatCase, spans: readonly AirSpan[], prediction: CoatPrediction, now: number }
+/** `hazeGapC`: gap to the dew point under which the material has been seen to haze here, kelvin; absent while nobody has seen any. */
+interface Asked { way: Climb, coat: CoatCase, spans: readonly AirSpan[], prediction: CoatPrediction, now: number, hazeGapC?: number }
 
 function spanAt(spans: readonly AirSpan[], at: number): AirSpan {
   return spans.findLast(s => s.fromAt <= at) ?? spans[0]!
@@ -50,7 +50,7 @@ function coldAdvice(asked: Asked): AdviceFacts[] {
 }
 
 /** Only while the film can still take harm: from now (or the application, if that is to come) until it can be handled. */
-function wetAdvice({ way, coat, spans, prediction, now }: Asked): AdviceFacts[] {
+function wetAdvice({ way, coat, spans, prediction, now, hazeGapC }: Asked): AdviceFacts[] {
   const from = Math.max(now, coat.appliedAt)
   const handle = prediction.milestones[way.material.handle]!
   const until = handle.likelyAt ?? Infinity
@@ -62,7 +62,8 @@ function wetAdvice({ way, coat, spans, prediction, now }: Asked): AdviceFacts[] 
   const thinAt = inSpans(spans, from, until, 0, (s, start) => firstThinDewMargin(s.clock, start))
   if (thinAt < until) facts.push({ code: 'dew-margin', when: thinAt <= from ? null : said(spanAt(spans, thinAt), thinAt, now) })
   const gapC = trackTemp(clock.track, from) - trackDewPoint(clock.track, from)
-  if (material.blushes && gapC < blushGapC) facts.push({ code: 'blush', gapC })
+  const limitC = hazeGapC ?? usualHazeGapC
+  if (material.blushes && gapC < limitC) facts.push({ code: 'blush', gapC, limitC, seenHere: hazeGapC !== undefined })
   const ratio = ratioOfVapour(tabledSaturation(clock.tools.air, trackDewPoint(clock.track, from)))
   const floor = material.dryAirFloor ?? null
   if (floor !== null && ratio < floor) facts.push({ code: 'dry-air', floor })
@@ -108,5 +109,5 @@ function coveredEarly(way: Climb, coat: CoatCase): number | null {
 
 /** What the air has to say about a coat, worst first: cold and dew before cautions, what stays true last. */
 export function adviseCoat(asked: Asked): Advice[] {
-  return [...coldAdvice(asked), ...wetAdvice(asked), ...standingAdvice(asked)].map(facts => ({ code: facts.code, text: adviceText(facts) }))
+  return [...coldAdvice(asked), ...wetAdvice(asked), ...standingAdvice(asked)].map(facts => ({ code: facts.code, text: adviceText(facts), facts }))
 }

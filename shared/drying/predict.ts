@@ -13,8 +13,8 @@ import { adviseCoat } from '#shared/drying/advice'
 /** Beyond this after the application nothing is promised. */
 export const horizonMs = 400 * 86_400_000
 
-/** From where a prediction is made: now (ms UTC), and how fast this bench is. */
-export interface PredictionView { now: number, bench?: BenchSpeed }
+/** From where a prediction is made: now (ms UTC), how fast this bench is, and the gap to the dew point under which the material hazes here (kelvin). */
+export interface PredictionView { now: number, bench?: BenchSpeed, hazeGapC?: number }
 
 interface Raw { likely: number, p90: number, p98: number, outside: boolean }
 
@@ -69,7 +69,7 @@ export function predictCoat(material: PreparedMaterial, coat: CoatCase, spans: r
     chilledAt,
     advice: [],
   }
-  prediction.advice = adviseCoat({ way, coat, spans, prediction, now: view.now })
+  prediction.advice = adviseCoat({ way, coat, spans, prediction, now: view.now, hazeGapC: view.hazeGapC })
   return prediction
 }
 

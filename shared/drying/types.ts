@@ -1,4 +1,5 @@
 import type { AirNoteKind, CoatSize, Driver, Ground } from '#shared/terms'
+import type { AdviceFacts } from '#shared/words/advice'
 
 /** Air at one instant: temperature in degrees Celsius, relative humidity as a share 0..1, at 101 325 Pa. */
 export interface Air { tempC: number, rh: number }
@@ -72,7 +73,8 @@ export interface MilestonePrediction {
 
 export interface WindowPrediction { opensAt: number | null, shutsAt: number | null }
 
-export interface Advice { code: string, text: string }
+/** Its sentence in degrees Celsius, and the figures it is made of. */
+export interface Advice { code: AdviceFacts['code'], text: string, facts: AdviceFacts }
 
 export interface CoatPrediction {
   milestones: MilestonePrediction[]

@@ -38,7 +38,7 @@ export const actBodies = {
   'work done': z.object({ step: stepKey }),
   'turned over': z.object({ step: stepKey }),
   'check done': z.object({ step: stepKey, ordinal: z.optional(z.int()) }),
-  'touch test': z.object({ milestone: z.enum(milestoneNames), reached: z.boolean(), coatActId: z.optional(id), spoilt: z.optional(z.boolean()) }),
+  'touch test': z.object({ milestone: z.enum(milestoneNames), reached: z.boolean(), coatActId: z.optional(id), spoilt: z.optional(z.boolean()), witnessId: z.optional(id) }),
   'stripped': z.object({ coatActId: z.optional(id) }),
   'moved': z.object({ placeId: id, carrierId: z.optional(z.nullable(id)) }),
   'not there': z.object({}),

@@ -1,4 +1,3 @@
-import type { AdviceLine } from '#shared/schemas/advice'
 import type { RateWire } from '#shared/schemas/rate'
 import type { CautionWire } from '#shared/schemas/schedule'
 import type { ActKind, Actor, DoubtCause, Hold, IntakeQuestion, StepKind, StepOrigin, StepStatus } from '#shared/terms'
@@ -83,7 +82,7 @@ export interface PieceDetail {
   layers: LayerLine[]
   steps: StepLine[]
   history: ActLine[]
-  films: { coatId: number, rate: RateWire | null, advice: AdviceLine[] }[]
+  films: { coatId: number, rate: RateWire }[]
   cautions: CautionWire[]
   intakes: { question: IntakeQuestion, answer: 'open' | 'not tested' | 'tested, none' | 'tested, found' }[]
 }

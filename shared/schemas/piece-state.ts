@@ -1,5 +1,6 @@
 import type { MilestonePrediction, WindowPrediction } from '#shared/drying/types'
 import type { MovedTurn } from '#shared/plan-moves'
+import type { OwnHandTest } from '#shared/words/hand-tests'
 import type { DoubtCause, Hold, IntakeQuestion, MilestoneName, Risk, StepKind, StepOrigin, StepStatus, TurnKind, TurnStatus } from '#shared/terms'
 
 // One shape for every screen, feed and message. Instants are ms UTC here; `toWire` makes them ISO 8601 on the way out.
@@ -123,6 +124,9 @@ export interface RoomState {
   sleptIn?: boolean
 }
 
+/** A board coated alongside, to be tested in place of the pieces: it speaks for every film of the act `actId`. */
+export interface WitnessState { id: number, name: string, actId: number }
+
 /** Like work done together, as the day ruler shows it. */
 export interface SessionState { id: number, family: string, startsAt: number, endsAt: number, lastStartAt: number | null, firstFew: number | null, lastStartFewAt: number | null, turnIds: number[], pieceIds: number[] }
 
@@ -140,4 +144,7 @@ export interface StudioState {
   /** What the plan moved noticeably of late. */
   moved: MovedTurn[]
   rags: { id: number, roomId: number, room: string, sinceAt: number }[]
+  witnesses: WitnessState[]
+  /** Where a material that is on something is tested by hand in its own way. */
+  handTests: OwnHandTest[]
 }

@@ -57,9 +57,16 @@ export const callWords = {
     title: (room: string) => `Time to check ${room}`,
     body: (room: string, name: string) => `${room} is still shut. ${cautionParts.lookIn} ${cautionParts.noseTires} ${name === '' ? 'An owner' : name} looks in and opens it, or leaves it shut.`,
   },
+  said: {
+    ask: 'You pressed this on the call. Is it so?',
+    leave: 'Not that',
+    gone: 'This has been told already, or is no longer wanted.',
+    close: 'Close',
+  },
   notification: {
     coatOn: 'Coat is on',
     stillTacky: 'Still tacky',
+    dryEnough: 'Dry enough',
     flatOutdoors: 'Flat outdoors',
     inWaterCan: 'In the water can',
     unreadableTitle: 'A call from the studio',

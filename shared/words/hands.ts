@@ -154,6 +154,13 @@ export function effectText(after: Effect, before: Effect | null, clock: Clock): 
   return was === timesText(after, clock) ? said : `${said} It was ${was}.`
 }
 
+/** What a test on one piece did to others of its material: "It teaches 4 other films: the most by 25 min later." */
+export function fellowsText(count: number, mostMs: number): string {
+  if (count === 0) return ''
+  const by = `${span(Math.abs(mostMs) / 60_000)} ${mostMs > 0 ? 'later' : 'sooner'}`
+  return count === 1 ? `It teaches one other film: give it till moves by ${by}.` : `It teaches ${count} other films: give it till moves by up to ${by}.`
+}
+
 /** The sheet that says what was told. */
 export const toldWords = {
   label: 'Told',

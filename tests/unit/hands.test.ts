@@ -139,8 +139,9 @@ describe('the keys of a job', () => {
   }
 
   it('put the common fact first', () => {
-    expect(labels(open, true, true)?.slice(0, 2)).toEqual(['Coat is on', 'Still tacky'])
-    expect(labels(drying, true, true)?.slice(0, 3)).toEqual(['I tested it: dry enough', 'Still tacky', 'Coat is on'])
+    expect(labels(open, true, true)?.slice(0, 2)).toEqual(['Coat is on', 'I am starting'])
+    // Before it may begin a test stands alone, and what nobody presses yet is under More.
+    expect(labels(drying, true, true)?.slice(0, 3)).toEqual([undefined, undefined, 'Coat is on'])
   })
 
   it('offer no warm air on a solvent film', () => {
@@ -150,8 +151,10 @@ describe('the keys of a job', () => {
   })
 
   it('leave a helper only what a helper may tell', () => {
-    expect(labels(open, false, false)).toEqual(['Still tacky', 'I tested it: dry enough'])
-    expect(labels(drying, true, false)).toEqual(['I tested it: dry enough', 'Still tacky', 'Coat is on', 'I am starting'])
+    expect(labels(open, false, false)).toEqual([undefined, undefined])
+    expect(open && actsOf(open, { step: false, maker: false }).tests).toBe('ready-to-recoat')
+    expect(labels(drying, true, false)).toEqual([undefined, undefined, 'Coat is on', 'I am starting'])
+    expect(drying && actsOf(drying, { step: true, maker: false }).tests).toBe('ready-to-recoat')
   })
 })
 

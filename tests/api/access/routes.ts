@@ -104,7 +104,10 @@ export const routes: Record<string, RouteCase> = {
   // It hangs on a private part: it is not there for a helper.
   'attachments/data-sheets/[id].get.ts': { least: 'helper', apart: 'row', at: 'sheetFile', asLeast: 404 },
   'attachments/data-sheets/[id].delete.ts': { least: 'maker', apart: 'row', at: 'sheetFile' },
-  'coats/[id]/advice.post.ts': { least: 'helper', apart: 'row', at: 'coat', body: () => ({ code: 'blush', answer: 'going on' }) },
+  'witnesses/index.post.ts': { least: 'helper', apart: 'named', asLeast: 404, body: rows => ({ actId: rows.act }) },
+  'witnesses/[id].delete.ts': { least: 'helper', apart: 'row', at: 'witness' },
+  'advice/index.get.ts': { least: 'helper', apart: 'view' },
+  'advice/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ code: 'blush', answer: 'going on', coatIds: [rows.coat] }) },
   'plan/index.get.ts': { least: 'helper', apart: 'view' },
   // A time that has gone by: who may is told so.
   'pins/index.post.ts': { least: 'maker', apart: 'named', asLeast: 422, body: rows => ({ turnIds: [rows.turn], startsAt: recently(), memberId: null }) },

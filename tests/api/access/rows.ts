@@ -7,7 +7,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, witness: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -43,8 +43,9 @@ function writeCalls(file: string, room: number, act: number, piece: number) {
   const cause = insert(`insert into cause (studio_id, kind, subject_type, subject_id, group_key, made_at) values (1, 'ready', 'turn', 1, 'g', ?)`, Date.now())
   const reminder = insert(`insert into reminder (studio_id, cause_id, stage, due_at, status, title, body, path) values (1, ?, 'first', ?, 'sent', ?, '', '/hands')`, cause, Date.now(), `${marker} call`)
   const coat = insert(`insert into coat (studio_id, piece_id, act_id, kind, began_at, ended_at, size, ground, settled_at) values (1, ?, ?, 'coat', ?, ?, 'normal', 'primed', ?)`, piece, act, Date.now(), Date.now(), Date.now())
+  const witness = insert('insert into witness (studio_id, coat_id, name) values (1, ?, ?)', coat, `${marker} board`)
   db.close()
-  return { ragDuty, reminder, coat }
+  return { ragDuty, reminder, coat, witness }
 }
 
 /** A turn of a batch with a schedule, and a pin that nobody's request can make without a plan. */

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { AdviceFacts } from '#shared/words/advice'
-import { adviceText, rateText, whenText } from '#shared/words/advice'
+import { adviceText, beforeText, presses, whenText } from '#shared/words/advice'
+import { startAdviceText } from '#shared/words/advice-start'
 import type { CoatCase, RoomAir } from '#shared/drying/types'
 import { potLifeAt } from '#shared/drying/pot-life'
 import { at, coatAt, hourMs, materialWith, predictIn, read, roomWith, rung, steadyRoom } from '../../helpers/drying'
@@ -103,13 +104,15 @@ describe('pot life', () => {
 describe('its sentences', () => {
   const all: AdviceFacts[] = [
     { code: 'air-assumed' }, { code: 'dew-margin', when: null }, { code: 'dew-margin', when: '03:10' }, { code: 'below-minimum-ahead', minTempC: 10, when: '03:10' },
-    { code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' }, { code: 'too-damp', ceiling: 0.85, warmC: 23 }, { code: 'cold-before-strength', minTempC: 8.3, when: '23:40' }, { code: 'covered-early', when: 'Thu 09:00' }, { code: 'dry-air', floor: 0.006 }, { code: 'blush', gapC: 8.37 },
+    { code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' }, { code: 'too-damp', ceiling: 0.85, warmC: 23 }, { code: 'cold-before-strength', minTempC: 8.3, when: '23:40' }, { code: 'covered-early', when: 'Thu 09:00' }, { code: 'dry-air', floor: 0.006 }, { code: 'blush', gapC: 8.37, limitC: 11.1, seenHere: false }, { code: 'blush', gapC: 8.37, limitC: 12.6, seenHere: true },
     { code: 'outside-measured', slowness: 4.5 }, { code: 'outside-sheet' }, { code: 'fan-early', when: null }, { code: 'fan-early', when: '10:20' }, { code: 'forced-drying' },
   ]
 
   it('are one plain sentence or two, each its own', () => {
-    const texts = all.map(adviceText)
-    expect(new Set(texts).size).toBe(all.length)
+    const texts = [...all.map(facts => adviceText(facts)), ...all.flatMap(facts => beforeText(facts) ?? [])]
+    // The last five that only a film on the piece can have have no sentence before it is on.
+    expect(texts).toHaveLength(2 * all.length - 5)
+    expect(new Set(texts).size).toBe(texts.length)
     for (const text of texts) {
       expect(text).toMatch(/^[A-Z].*\.$/)
       expect(text).not.toMatch(/!|undefined|NaN|s.?afe/i)
@@ -119,8 +122,11 @@ describe('its sentences', () => {
   it('carry their numbers', () => {
     expect(adviceText({ code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' })).toContain('8.3 °C from Tue 03:10')
     expect(adviceText({ code: 'dry-air', floor: 0.006 })).toContain('6 g')
-    expect(adviceText({ code: 'blush', gapC: 8.37 })).toContain('8.4 °C')
-    expect(rateText({ factor: 0.4123, tempC: -1.04, rh: 0.78 })).toBe('0.41 of sheet speed: 78 % humidity, −1 °C')
+    expect(adviceText({ code: 'blush', gapC: 8.37, limitC: 11.1, seenHere: false })).toContain('8.4 °C above its dew point; under 11.1 °C such a film may haze')
+    // 8.3 C is 46.94 F, a gap of 3 K is 5.4 F.
+    expect(adviceText({ code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' }, 'us')).toContain('47 °F')
+    expect(beforeText({ code: 'dew-margin', when: null }, 'us')).toContain('less than 5 °F')
+    expect(startAdviceText({ code: 'acclimatise', moisture: 11.84, rest: 7.93, when: 'Mon 09:00' })).toContain('rest at 7.9 % moisture; these are near 11.8 %')
   })
 
   it('name the weekday of another day: day 0 was a Thursday', () => {

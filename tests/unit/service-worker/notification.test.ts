@@ -11,7 +11,7 @@ describe('a notification', () => {
 
   it('offers the keys that answer it', () => {
     expect(keys('/hands?turn=7&act=coat')).toEqual(['coat-on', 'still-tacky'])
-    expect(keys('/hands?turn=7')).toEqual(['still-tacky'])
+    expect(keys('/hands?turn=7')).toEqual(['dry-enough', 'still-tacky'])
     expect(keys('/hands?rags=3')).toEqual(['flat-outdoors', 'in-water-can'])
     expect(keys('/hands?list=leaving')).toEqual([])
   })

@@ -1,0 +1,27 @@
+import type { Units } from '#shared/units'
+import { temperatureText } from '#shared/units'
+
+/** Advice about what is about to go on, be joined or be packed, that does not come from the film's own clock. `when` is a clock time ready to print. */
+export type StartAdvice =
+  /** A rule of one finish over another; `text` is the rule's own sentence. */
+  | { code: 'over-too-early', text: string, laid: string, when: string }
+  | { code: 'over-better-later', text: string, laid: string, when: string }
+  | { code: 'never-over', text: string }
+  /** Moisture of board or wood, per cent of the dry weight: as it is, and at rest in the room where it is glued. */
+  | { code: 'acclimatise', moisture: number, rest: number, when: string }
+  | { code: 'still-air' }
+  | { code: 'pot-life', minutes: number, sheetMinutes: number, tempC: number }
+  | { code: 'pack-early', when: string }
+
+/** The sentence for one of them. */
+export function startAdviceText(facts: StartAdvice, units: Units = 'metric'): string {
+  switch (facts.code) {
+    case 'over-too-early': return `${facts.text} The film beneath went on ${facts.laid}: not before ${facts.when}.`
+    case 'over-better-later': return `${facts.text} The film beneath went on ${facts.laid}: better from ${facts.when}.`
+    case 'never-over': return `${facts.text} Strip the film beneath, or leave this out.`
+    case 'acclimatise': return `Wood and board here come to rest at ${facts.rest.toFixed(1)} % moisture; these are near ${facts.moisture.toFixed(1)} %, from where they lay. Let them lie here till ${facts.when}, or the joint is strained as they settle.`
+    case 'still-air': return 'Somebody said that the air moves here: leaf wants it still.'
+    case 'pot-life': return `At ${temperatureText(facts.tempC, units).replace('-', '−')} what is mixed lasts about ${Math.round(facts.minutes)} min; the sheet says ${Math.round(facts.sheetMinutes)}. A deep pot goes off sooner: mix less.`
+    case 'pack-early': return `Wrapped before ${facts.when} it may print: two days at least, longer in damp air, and never finish to finish.`
+  }
+}
