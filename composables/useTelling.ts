@@ -59,8 +59,8 @@ function questionIn(answer: Told): VapourAsked | null {
 }
 
 /** What a test taught about films of other pieces, in words; empty where it moved none. */
-function fellowsMoved(before: StudioState | null, after: StudioState | null, own: readonly number[]): string {
-  if (!before || !after) return ''
+function fellowsMoved(kind: TellableKind, before: StudioState | null, after: StudioState | null, own: readonly number[]): string {
+  if (kind !== 'touch test' || !before || !after) return ''
   const others = (state: StudioState) => ({ ...state, pieces: state.pieces.filter(piece => !own.includes(piece.id)) })
   const { count, mostMs } = movedFilms(others(before), others(after))
   return fellowsText(count, mostMs)
@@ -110,8 +110,7 @@ function makeTelling(studio: Studio) {
     if (question) return wait(telling, question)
     if (answer.outcome === 'refused') return told.add({ ...blank, state: 'refused', problem: Object.values(answer.fields)[0] ?? answer.message })
     const { effect, now } = describe({ ...blank, rootId: answer.actId })
-    const fellows = telling.kind === 'touch test' ? fellowsMoved(stood, studio.state.value, blank.pieceIds) : ''
-    return told.add({ ...blank, state: 'told', actId: answer.actId, rootId: answer.actId, effect: [effect, fellows].filter(Boolean).join(' '), before: now })
+    return told.add({ ...blank, state: 'told', actId: answer.actId, rootId: answer.actId, effect: [effect, fellowsMoved(telling.kind, stood, studio.state.value, blank.pieceIds)].filter(Boolean).join(' '), before: now })
   }
 
   /** The three answers, for everything that waits for them. */

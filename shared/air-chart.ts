@@ -38,6 +38,15 @@ export function lineOf(points: readonly CoursePoint[], value: (point: CoursePoin
   return { told: path(told), reckoned: path(reckoned) }
 }
 
+/** The band of doubt around the reckoned part of a line, from the last point that was read on. */
+export function bandOf(points: readonly CoursePoint[], edges: (point: CoursePoint) => readonly [number, number], scale: Pick<Scale, 'low' | 'high'>, span: { from: number, to: number }): string {
+  const turn = points.findIndex(point => point.reckoned)
+  const part = turn < 0 ? [] : points.slice(Math.max(0, turn - 1))
+  if (part.length < 2) return ''
+  const at = (point: CoursePoint, edge: 0 | 1) => `${short(1000 * (point.at - span.from) / (span.to - span.from))},${short(heightAt(scale, edges(point)[edge]))}`
+  return `M${part.map(point => at(point, 1)).join('L')}L${[...part].reverse().map(point => at(point, 0)).join('L')}Z`
+}
+
 /** The ground under a line, down to the box's floor. */
 export function areaOf(points: readonly CoursePoint[], value: (point: CoursePoint) => number, scale: Pick<Scale, 'low' | 'high'>, span: { from: number, to: number }): string {
   const x = (at: number) => short(1000 * (at - span.from) / (span.to - span.from))

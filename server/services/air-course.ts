@@ -12,7 +12,9 @@ import type { CourseSpan, RoomCourse } from '#shared/schemas/air'
 const rounded = (value: number) => Math.round(value * 100) / 100
 const toFour = (value: number) => Math.round(value * 10_000) / 10_000
 
-/** How the air of every room went up to `now` (ms UTC). */
+const pair = ([low, high]: [number, number], round: (value: number) => number): [number, number] => [round(low), round(high)]
+
+/** How the air of every room went up to `now` (ms UTC), and how it will go from there. */
 export function airCourses(db: Database, studioId: number, span: CourseSpan, now: number): RoomCourse[] {
   const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
   if (!owner) return []
@@ -23,7 +25,8 @@ export function airCourses(db: Database, studioId: number, span: CourseSpan, now
     const points = airCourse(track, times, tools).map(point => ({
       ...point, tempC: rounded(point.tempC), rh: toFour(point.rh), dewPointC: rounded(point.dewPointC),
       boardMoisture: point.boardMoisture === null ? null : rounded(point.boardMoisture), speeds: point.speeds.map(rounded),
+      doubt: point.doubt && { tempC: pair(point.doubt.tempC, rounded), rh: pair(point.doubt.rh, toFour), pace: rounded(point.doubt.pace) },
     }))
-    return { roomId, fromAt: times[0] ?? now, toAt: now, points }
+    return { roomId, fromAt: times[0] ?? now, nowAt: now, toAt: times.at(-1) ?? now, points }
   })
 }

@@ -2,6 +2,7 @@ import type { AirTables } from '#shared/air/tables'
 import { tabledSaturation } from '#shared/air/tables'
 import { offsetAt } from '#shared/air/zone'
 import type { RoomClock, Spell } from '#shared/drying/clock'
+import { dewMarginC } from '#shared/air/margin'
 
 const dayMs = 86_400_000
 
@@ -70,9 +71,6 @@ export function firstCold(clock: RoomClock, minTempC: number, from: number): num
 export function firstDampHalfHour(clock: RoomClock, ceiling: number, from: number): number {
   return firstSpell(clock, spellsOf(clock, `damp ${ceiling}`, atCeiling, ceiling), from, 30 * 60_000)
 }
-
-/** Degrees a surface must stay above the dew point for a coat to go on, or to stay on while wet, a coating inspector's rule. */
-export const dewMarginC = 3
 
 /** First instant from `from` on at which the air is less than 3 degrees above its dew point; Infinity when none comes. */
 export function firstThinDewMargin(clock: RoomClock, from: number): number {

@@ -37,9 +37,13 @@ export type CourseSpan = typeof courseSpanNames[number]
 
 /**
  * A room's air at an instant. `speeds` in the order of `filmDrivers`, 1 as fast as the sheet; `boardMoisture` per cent of the dry weight.
- * `reckoned` after the last reading: nobody measured it.
+ * `reckoned` after the last reading: nobody measured it. Then `doubt` says how far off it may be, eight times in ten: temperature and humidity from..to, and the factor
+ * by which films may be faster or slower; null where it was read.
  */
-export interface CoursePoint { at: number, tempC: number, rh: number, dewPointC: number, boardMoisture: number | null, speeds: number[], reckoned: boolean }
+export interface CoursePoint { at: number, tempC: number, rh: number, dewPointC: number, boardMoisture: number | null, speeds: number[], reckoned: boolean, doubt: CourseDoubt | null }
 
-/** How a room's air went, ms UTC. No points before its first reading. */
-export interface RoomCourse { roomId: number, fromAt: number, toAt: number, points: CoursePoint[] }
+/** Degrees Celsius, shares 0..1, and a factor of 1 or more. */
+export interface CourseDoubt { tempC: [number, number], rh: [number, number], pace: number }
+
+/** How a room's air went and will go, ms UTC. No points before its first reading; one stands at `nowAt`. */
+export interface RoomCourse { roomId: number, fromAt: number, nowAt: number, toAt: number, points: CoursePoint[] }

@@ -39,11 +39,11 @@ export const airWords = {
   boardCold: 'too cold to say',
   outdoor: 'outdoors',
   unheated: 'not heated',
-  speeds: (when: string | null) => when === null ? 'How fast films dry now' : `How fast films dried: ${when}`,
+  speeds: (when: string | null, ahead: boolean) => when === null ? 'How fast films dry now' : ahead ? `How fast films would dry: ${when}` : `How fast films dried: ${when}`,
   speedsHint: 'Drying speed is against a sheet that speaks of 20 °C and 50 % humidity; each film goes by its own sheet on the board.',
   span: 'Show',
   spans: { day: 'a day', week: 'a week', month: 'a month' },
-  spanNames: { day: 'the last day', week: 'the last week', month: 'the last month' },
+  spanNames: { day: 'the last day and the night ahead', week: 'the last week and two days ahead', month: 'the last month and four days ahead' },
   courseWaiting: 'Fetching how the air went',
   courseFailed: 'How the air went could not be fetched.',
   courseEmpty: 'Nothing was read here in this time.',
@@ -51,7 +51,12 @@ export const airWords = {
   warmthLine: 'temperature',
   dewLine: 'dew point',
   sheetLine: 'Dotted: as fast as the sheet says.',
-  reckonedLine: 'Dashed: reckoned on, nobody read it.',
+  reckonedLine: 'Dashed: reckoned on, nobody read it. It lies in the shaded band eight times in ten.',
+  doubt: (value: string, low: string, high: string) => `${value}, ${low} to ${high}`,
+  coldest: 'Coldest ahead',
+  coldestValue: (temp: string, when: string) => `${temp} at ${when}`,
+  drip: 'Near its dew point',
+  dripValue: (when: string) => `from ${when}: bring wet work in`,
   lookAlong: (room: string, span: string) => `Look along ${span}: ${room}`,
   nowPoint: 'Now',
   reckonedPoint: 'reckoned on',
@@ -107,5 +112,7 @@ export function movedRungText({ names, step, before, after }: MovedRung, clock: 
 /** "Tue 14:00: 19.4 °C, 61 %, dew point 11.8 °C, board and wood at 10.9 %." A point of a chart read out. */
 export function coursePointText(point: CoursePoint, when: string, units: Units): string {
   const board = point.boardMoisture === null ? '' : `, board and wood settle at ${point.boardMoisture.toFixed(1)} %`
-  return `${when}: ${temperatureText(point.tempC, units)}, ${humidityText(point.rh)}, dew point ${temperatureText(point.dewPointC, units)}${board}${point.reckoned ? `, ${airWords.reckonedPoint}` : ''}`
+  const { doubt } = point
+  const between = doubt ? ` (${doubt.tempC.map(each => temperatureText(each, units)).join(' to ')}, ${doubt.rh.map(humidityText).join(' to ')})` : ''
+  return `${when}: ${temperatureText(point.tempC, units)}, ${humidityText(point.rh)}${between}, dew point ${temperatureText(point.dewPointC, units)}${board}${point.reckoned ? `, ${airWords.reckonedPoint}` : ''}`
 }

@@ -29,7 +29,7 @@ export function pieceState(id: number, name: string, groups: GroupState[], chang
 export function studioWith(pieces: PieceState[], changes: Partial<StudioState> = {}): StudioState {
   const place = (id: number, name: string, kind: string, capacity: number) => ({ id, roomId: 1, name, kind, capacity, taken: pieces.filter(piece => piece.groups.some(group => group.placeId === id)).length })
   return {
-    at: noon, revision: 1, studio: { id: 1, name: 'Fir Lane', zone: 'UTC', units: 'metric' }, hours: [{ opensAt: at(8), closesAt: at(17.5) }],
+    at: noon, revision: 1, studio: { id: 1, name: 'Fir Lane', zone: 'UTC', units: 'metric' }, hours: [{ opensAt: at(8), closesAt: at(17.5) }], witnesses: [], handTests: [],
     rooms: [{ id: 1, name: 'Front bench', heated: true, outdoor: false, sprayArea: false, air: { tempC: 19.4, rh: 0.61, readAt: noon - 12 * minute, assumed: false }, waterSpeed: 0.78, keepOut: null }],
     places: [place(1, 'Shelf A', 'shelf', 12), place(2, 'Clamps', 'clamps', 8), place(3, 'Rail', 'rail', 4)],
     pieces, sessions: [], moved: [], rags: [], ...changes,

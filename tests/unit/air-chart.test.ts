@@ -1,10 +1,10 @@
 import { describe, expect, it } from 'vitest'
-import { areaOf, heightAt, lineOf, pointTime, scaleOf, timeTicks } from '#shared/air-chart'
+import { areaOf, bandOf, heightAt, lineOf, pointTime, scaleOf, timeTicks } from '#shared/air-chart'
 import type { CoursePoint } from '#shared/schemas/air'
 import { studioZone } from '#shared/time'
 
 const at = (text: string) => Date.parse(text)
-const point = (time: number, tempC: number, reckoned = false): CoursePoint => ({ at: time, tempC, rh: 0.5, dewPointC: 9, boardMoisture: 9, speeds: [1, 1, 1, 1, 1, 1], reckoned })
+const point = (time: number, tempC: number, reckoned = false): CoursePoint => ({ at: time, tempC, rh: 0.5, dewPointC: 9, boardMoisture: 9, speeds: [1, 1, 1, 1, 1, 1], reckoned, doubt: reckoned ? { tempC: [tempC - 2, tempC + 2], rh: [0.4, 0.6], pace: 1.2 } : null })
 
 describe('a scale', () => {
   it('takes whole steps around its values', () => {
@@ -28,6 +28,11 @@ describe('a line', () => {
   it('may be wholly one or the other, or none', () => {
     expect(lineOf([point(0, 10, true), point(100, 20, true)], each => each.tempC, scale, span)).toEqual({ told: '', reckoned: 'M0,100L1000,0' })
     expect(lineOf([point(0, 10)], each => each.tempC, scale, span)).toEqual({ told: '', reckoned: '' })
+  })
+  it('has its doubt around it from the last reading on', () => {
+    // 15 C read at 50; 20 C reckoned at 100, give or take 2: heights 50, then 100 - 120 kept at 0, and 20.
+    expect(bandOf([point(0, 10), point(50, 15), point(100, 20, true)], each => each.doubt?.tempC ?? [each.tempC, each.tempC], scale, span)).toBe('M500,50L1000,0L1000,20L500,50Z')
+    expect(bandOf([point(0, 10), point(50, 15)], each => [each.tempC, each.tempC], scale, span)).toBe('')
   })
   it('has its ground under it', () => expect(areaOf([point(0, 15), point(100, 20)], each => each.tempC, scale, span)).toBe('M0,100L0,50L1000,0L1000,100Z'))
 })

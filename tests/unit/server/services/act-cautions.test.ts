@@ -5,8 +5,8 @@ import { recordAct } from '~~/server/services/acts'
 import type { Teller } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { correctAct } from '~~/server/services/corrections'
-import { findPiece } from '~~/server/services/piece-detail'
 import { openRoom } from '~~/server/services/keep-outs'
+import { adviceNow } from '~~/server/services/advice/now'
 import { pieceStates } from '~~/server/services/piece-states'
 import { addStatement } from '~~/server/services/vapour-settings'
 import type { ActRequest, CorrectionRequest, VapourAnswers } from '#shared/schemas/act'
@@ -194,13 +194,10 @@ describe('a step that could be next', () => {
 
 describe('advice about a film', () => {
   it('asks for no heater, dehumidifier or fan while a solvent film is wet in its room', () => {
-    const { ids: [one = 0, two = 0], made, of, db, studioId, members, rooms } = workshop({ place: 'shelf' })
+    const { ids: [one = 0, two = 0], made, of, db, studioId, rooms } = workshop({ place: 'shelf' })
     db.insert(reading).values({ studioId, roomId: rooms.bench, at: now, toldAt: now, tempC: 18, rh: 0.94, source: 'note' }).run()
     made('coat on', one, of('acrylic-varnish'))
-    const advice = () => {
-      const found = findPiece(db, studioId, members.maker, one, now)
-      return 'films' in found ? found.films.flatMap(film => film.advice).find(each => each.code === 'too-damp')?.text : undefined
-    }
+    const advice = () => adviceNow(db, studioId, [one], now).find(line => line.code === 'too-damp' && line.coatIds.length > 0)?.text
     expect(advice()).toContain(': dry the room')
     made('coat on', two, of('nitrocellulose-lacquer'), { vapour: none })
     expect(advice()).toBe('Too damp for a time to be promised. Wait for drier air: no heater, dehumidifier or fan beside a wet solvent film.')
