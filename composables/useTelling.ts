@@ -97,12 +97,10 @@ function makeTelling(studio: Studio) {
     const next = groupMoment(studio.pieces.value.flatMap(read => (line.pieceIds.includes(read.piece.id) ? read.next ?? [] : [])))
     return { effect: next ? toldWords.next(momentText(next, studio.clock.value)) : '', now: null }
   }
-
   const { asked, wait, takeWaiting } = waitingWork()
   async function say(telling: Telling, vapour?: VapourAnswers) {
     const base = baseOf(telling)
-    const before = wets(telling.kind) ? null : effectNow({ ...base, rootId: null })
-    const stood = studio.state.value
+    const [stood, before] = [studio.state.value, wets(telling.kind) ? null : effectNow({ ...base, rootId: null })]
     const answer = await tell(telling.kind, telling.pieces, telling.body, telling.doneAt, telling.partIds, vapour)
     const blank = { ...base, clientKey: null, actId: null, rootId: null, effect: '', before, problem: null }
     if (answer.outcome === 'later') return told.add({ ...blank, state: 'later', clientKey: answer.clientKey })

@@ -1,6 +1,6 @@
 import { equilibriumMoisture } from '#shared/air/equilibrium'
 import { humidityRatio, rhFromDewPoint } from '#shared/air/psychrometrics'
-import { airAt } from '#shared/air/room'
+import { airAt, lastBefore } from '#shared/air/room'
 import type { RoomTrack } from '#shared/air/room'
 import { bandZ } from '#shared/drying/doubt'
 import { moistureShare } from '#shared/drying/rates'
@@ -59,9 +59,9 @@ export function courseDoubt({ tempC, dewPointC }: { tempC: number, dewPointC: nu
   return { tempC: [tempC - off, tempC + off], rh: [rhFromDewPoint(tempC + off, dewPointC), rhFromDewPoint(tempC - off, dewPointC)], pace: Math.exp(log) }
 }
 
-/** A room's air at some instants (ms UTC) and what it does to films and board. Before the first reading there is nothing to draw. */
-export function airCourse(track: RoomTrack, times: readonly number[], tools: DryingTools): CoursePoint[] {
-  const last = track.times.at(-1)
+/** A room's air at some instants (ms UTC) and what it does to films and board. Before the first reading there is nothing to draw; a forecast after `now` is not read. */
+export function airCourse(track: RoomTrack, times: readonly number[], tools: DryingTools, now = Infinity): CoursePoint[] {
+  const last = track.times[lastBefore(track.times, now)]
   return times.flatMap((time): CoursePoint[] => {
     const air = airAt(track, time)
     if (air.assumed || last === undefined) return []

@@ -22,7 +22,7 @@ export function airCourses(db: Database, studioId: number, span: CourseSpan, now
   return [...roomAirs(db, owner, courseTimes(span, now, 0)[0] ?? now)].map(([roomId, air]): RoomCourse => {
     const track = trackRoom(tools, air, now)
     const times = courseTimes(span, now, offsetAt(track.zone, now))
-    const points = airCourse(track, times, tools).map(point => ({
+    const points = airCourse(track, times, tools, now).map(point => ({
       ...point, tempC: rounded(point.tempC), rh: toFour(point.rh), dewPointC: rounded(point.dewPointC),
       boardMoisture: point.boardMoisture === null ? null : rounded(point.boardMoisture), speeds: point.speeds.map(rounded),
       doubt: point.doubt && { tempC: pair(point.doubt.tempC, rounded), rh: pair(point.doubt.rh, toFour), pace: rounded(point.doubt.pace) },

@@ -20,8 +20,8 @@ export function airNow(db: Database, studioId: number, now: number): RoomAirStat
       dewPointC: rh > 0 ? dewPoint(tempC, rh) : null,
       boardMoisture: boardMoisture({ tempC, rh }),
       speeds: filmDrivers.map(driver => ({ driver, factor: driverRate(driver, { tempC, rh }, sheetAir) })),
-      notes: listReadings(db, studioId, id, notesShown, 'told').map(({ doubt: _doubt, ...note }) => note),
-      last: listReadings(db, studioId, id, 1).map(({ doubt: _doubt, ...note }) => note)[0] ?? null,
+      notes: listReadings(db, studioId, id, notesShown, now, 'told').map(({ doubt: _doubt, ...note }) => note),
+      last: listReadings(db, studioId, id, 1, now).map(({ doubt: _doubt, ...note }) => note)[0] ?? null,
       imports: listImports(db, studioId, id),
     }]
   })

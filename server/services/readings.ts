@@ -1,4 +1,4 @@
-import { and, desc, eq, isNull, lte } from 'drizzle-orm'
+import { and, desc, eq, isNull, lte, ne } from 'drizzle-orm'
 import { reading, room } from '~~/db/schema'
 import { memberNames } from '~~/server/services/member-names'
 import type { Membership } from '~~/server/services/sessions'
@@ -63,9 +63,9 @@ export function removeReading(db: Database, studioId: number, member: Membership
   })
 }
 
-/** The newest readings of a room, newest first: all of them, or those that were told one by one and not with a file. */
-export function listReadings(db: Database, studioId: number, roomId: number, count: number, which: 'all' | 'told' = 'all') {
+/** The newest readings of a room up to `now` (ms UTC), newest first: all of them, or those that people told one by one. A forecast is none. */
+export function listReadings(db: Database, studioId: number, roomId: number, count: number, now: number, which: 'all' | 'told' = 'all') {
   const names = memberNames(db, studioId)
-  return db.select().from(reading).where(scoped(reading, studioId, eq(reading.roomId, roomId), which === 'told' ? isNull(reading.importId) : undefined)).orderBy(desc(reading.at)).limit(count).all()
+  return db.select().from(reading).where(scoped(reading, studioId, eq(reading.roomId, roomId), lte(reading.at, now + clockSlack), which === 'told' ? and(isNull(reading.importId), ne(reading.source, 'weather')) : undefined)).orderBy(desc(reading.at)).limit(count).all()
     .map(row => ({ id: row.id, at: row.at, tempC: row.tempC, rh: row.rh, source: row.source, doubt: row.doubt, memberId: row.memberId, by: names.get(row.memberId ?? 0) ?? null }))
 }

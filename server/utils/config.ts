@@ -28,6 +28,8 @@ export interface Config {
   pushKeys: { publicKey: string, privateKey: string } | null
   /** STILLWET_ALLOW_LOOPBACK_PUSH=1: push to http://127.0.0.1, for tests; refused in production. */
   allowLoopbackPush: boolean
+  /** STILLWET_WEATHER_URL: an address that tells the weather outside; null: nobody is asked. */
+  weatherAddress: string | null
 }
 
 export interface SmtpConfig {
@@ -65,10 +67,10 @@ function readSecret(env: Environment) {
   return secret
 }
 
-function readAddress(env: Environment) {
-  const value = given(env, 'STILLWET_PUBLIC_URL')
+function readAddress(env: Environment, name: string) {
+  const value = given(env, name)
   if (value === null) return null
-  if (!URL.canParse(value) || !/^https?:$/.test(new URL(value).protocol)) throw new ConfigError(`STILLWET_PUBLIC_URL must be an http or https address, not "${value}".`)
+  if (!URL.canParse(value) || !/^https?:$/.test(new URL(value).protocol)) throw new ConfigError(`${name} must be an http or https address, not "${value}".`)
   return value.replace(/\/+$/, '')
 }
 
@@ -113,12 +115,13 @@ export function readConfig(env: Environment): Config {
     backupFolder: given(env, 'STILLWET_BACKUPS') ?? join(dataFolder, 'backups'),
     storageFolder: given(env, 'STILLWET_STORAGE') ?? join(dataFolder, 'storage'),
     outboxFolder: given(env, 'STILLWET_OUTBOX') ?? join(dataFolder, 'outbox'),
-    publicUrl: readAddress(env),
+    publicUrl: readAddress(env, 'STILLWET_PUBLIC_URL'),
     sessionSecret: readSecret(env),
     smtp: readSmtp(env),
     pushSubject: readPushSubject(env),
     pushKeys: readPushKeys(env),
     allowLoopbackPush,
+    weatherAddress: readAddress(env, 'STILLWET_WEATHER_URL'),
   }
 }
 

@@ -8,8 +8,8 @@ import { idParams } from '#shared/schemas/common'
 export default defineStudioHandler({
   may: 'read the studio',
   params: idParams,
-  run: ({ db, studio, params, event }) => {
-    const made = exportReadings(db, studio, params.id)
+  run: ({ db, studio, params, now, event }) => {
+    const made = exportReadings(db, studio, params.id, now)
     if (isRefusal(made)) return made
     setResponseHeader(event, 'content-type', 'text/csv; charset=utf-8')
     setResponseHeader(event, 'content-disposition', `attachment; filename="${made.fileName}"`)

@@ -10,5 +10,5 @@ const shown = 60
 export default defineStudioHandler({
   may: 'read the studio',
   params: idParams,
-  run: ({ db, studio, params }) => hasRoom(db, studio.id, params.id) ? toWire(listReadings(db, studio.id, params.id, shown)) : absent(),
+  run: ({ db, studio, params, now }) => hasRoom(db, studio.id, params.id) ? toWire(listReadings(db, studio.id, params.id, shown, now)) : absent(),
 })

@@ -107,8 +107,8 @@ describe('the course of the air', () => {
     const of = made()
     bringInFile(of.db, of.studioId, of.members.maker.id, of.rooms.bench, request(every10(36).map(at => at - 2 * hour), 20, 0.5), now)
     const [bench, spray] = airCourses(of.db, of.studioId, 'day', now)
-    // Six hours of readings end 2 h 10 min ago; a point every half-hour: 4:00 to 9:30 UTC measured, 10:00 to 12:00 reckoned.
-    expect(bench?.points.map(each => each.reckoned)).toEqual([...Array(12).fill(false), ...Array(5).fill(true)])
+    // Six hours of readings end 2 h 10 min ago; a point every half-hour: 4:00 to 9:30 UTC measured, 10:00 to 12:00 reckoned, and 18 hours ahead.
+    expect(bench?.points.map(each => each.reckoned)).toEqual([...Array(12).fill(false), ...Array(5 + 36).fill(true)])
     // 20 °C and 50 % is the sheets' own climate: every film at its sheet's speed. Table of the Wood Handbook: 9.3 % at 70 °F and 50 %, hardly another at 68.
     expect(bench?.points[0]).toMatchObject({ at: now - 8 * hour, tempC: 20, rh: 0.5, dewPointC: 9.27, speeds: [1, 1, 1, 1, 1, 1] })
     expect(bench?.points[0]?.boardMoisture).toBeCloseTo(9.3, 0)
@@ -120,10 +120,10 @@ describe('the file of a room', () => {
   it('holds every reading and whose it is', () => {
     const of = made()
     bringInFile(of.db, of.studioId, of.members.maker.id, of.rooms.spray, request([now - hour], 20, 0.5), now)
-    const saved = exportReadings(of.db, of.db.select().from(studio).get()!, of.rooms.spray)
+    const saved = exportReadings(of.db, of.db.select().from(studio).get()!, of.rooms.spray, now)
     if (!saved.ok) throw new Error(saved.message)
     expect(saved.fileName).toBe('air-spray-room.csv')
     expect(saved.text.split('\r\n')[1]).toBe('2026-06-10T11:00:00.000Z,2026-06-10 11:00:00,20.00,50.00,9.27,9.3,from a file,The maker')
-    expect(exportReadings(of.db, of.db.select().from(studio).get()!, 999)).toMatchObject({ reason: 'absent' })
+    expect(exportReadings(of.db, of.db.select().from(studio).get()!, 999, now)).toMatchObject({ reason: 'absent' })
   })
 })

@@ -32,6 +32,11 @@ describe('readConfig', () => {
     expect(() => read({ STILLWET_SMTP_HOST: 'mail.test', STILLWET_MAIL_FROM: 'a@b.test', STILLWET_SMTP_PORT: '99999' })).toThrow('STILLWET_SMTP_PORT must be a whole number from 1 to 65535.')
     expect(read({ STILLWET_SMTP_HOST: 'mail.test', STILLWET_MAIL_FROM: 'a@b.test' }).smtp).toEqual({ host: 'mail.test', port: 587, secure: false, user: null, password: '', from: 'a@b.test' })
   })
+  it('asks nobody for the weather unless an address is given', () => {
+    expect(read().weatherAddress).toBeNull()
+    expect(read({ STILLWET_WEATHER_URL: 'http://127.0.0.1:9/weather' }).weatherAddress).toBe('http://127.0.0.1:9/weather')
+    expect(() => read({ STILLWET_WEATHER_URL: 'outside' })).toThrow('STILLWET_WEATHER_URL must be an http or https address, not "outside".')
+  })
   it('takes the public address without its last slash', () => {
     expect(read({ STILLWET_PUBLIC_URL: 'https://studio.test/' }).publicUrl).toBe('https://studio.test')
     expect(() => read({ STILLWET_PUBLIC_URL: 'studio.test' })).toThrow('STILLWET_PUBLIC_URL must be an http or https address, not "studio.test".')
