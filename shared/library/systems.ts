@@ -32,6 +32,10 @@ export const systemRules: readonly SystemRule[] = [
     text: 'Under oil paint, acrylic gesso wants three days at least. Two weeks is better.', ...article('acrylic gesso under oil paint'),
   },
   {
+    name: 'acrylic paint over acrylic gesso', under: ['acrylic-gesso'], over: ['heavy-body-acrylic', 'craft-acrylic'], minMin: hour, recommendedMin: 8 * hour, bestMin: null,
+    text: 'Acrylic paint goes on gesso once the gesso no longer lifts. Overnight is better.', ...article('acrylic gesso under acrylic paint'),
+  },
+  {
     name: 'gesso over a sizing layer', under: ['acrylic-size'], over: ['acrylic-gesso'], minMin: 8 * hour, recommendedMin: 12 * hour, bestMin: null,
     text: 'Leave a sizing layer overnight before gesso.', ...article('acrylic size under gesso'),
   },

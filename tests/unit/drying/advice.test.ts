@@ -119,6 +119,11 @@ describe('its sentences', () => {
     }
   })
 
+  it('press where the work takes harm, and only there', () => {
+    expect(['dew-margin', 'chilled', 'below-minimum-ahead', 'cold-before-strength', 'too-damp', 'over-too-early'].every(presses)).toBe(true)
+    expect(['air-assumed', 'blush', 'fan-early', 'pot-life', 'over-better-later'].some(presses)).toBe(false)
+  })
+
   it('carry their numbers', () => {
     expect(adviceText({ code: 'chilled', minTempC: 8.3, when: 'Tue 03:10' })).toContain('8.3 °C from Tue 03:10')
     expect(adviceText({ code: 'dry-air', floor: 0.006 })).toContain('6 g')

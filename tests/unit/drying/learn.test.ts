@@ -4,6 +4,8 @@ import type { BenchTest } from '#shared/drying/learn'
 import { learnBench } from '#shared/drying/learn'
 import { fadeOf, weightOf } from '#shared/drying/bench-tests'
 import type { PreparedMaterial } from '#shared/drying/material'
+import { sheetScale } from '#shared/drying/doubt'
+import { density, normal } from '#shared/drying/normal'
 import { prepareMaterial, withLearned } from '#shared/drying/material'
 import { predictCoat } from '#shared/drying/predict'
 import { roomClock } from '#shared/drying/clock'
@@ -50,6 +52,26 @@ describe('what a bench learns from its tests', () => {
     // The second division has no offset to learn, and one bound tells none from another: the weights stay as they were.
     expect(bench.kind === 'learned' && bench.rungs[1]!.parts[1]!.mean).toBeCloseTo(0, 9)
     expect(bench.kind === 'learned' && bench.rungs[1]!.parts[0]!.weight).toBeCloseTo(0.38, 2)
+  })
+
+  it.each([-1, -0.4, 0.7, 1.2])('agrees with the closed form after one bound at %f of the band', (a) => {
+    // u ~ N(0, 1) and a coat's score b u + c e of variance b² + c² = 1: given score > a, the mean of u is b phi(a) / (1 - Phi(a)), weighed by the share of answers that say anything.
+    const tail = 1 - normal(a)
+    const weight = 0.97 * tail / (0.97 * tail + 0.03 / 2)
+    const b = Math.sqrt(0.97)
+    const scale = sheetScale(sheet.rungs[1]!.quantiles)
+    const bench = learnBench(sheet.rungs.map(r => r.quantiles), [test(scale.middle + a * (a > 0 ? scale.late : scale.early), false)])
+    // The part is b times the offset.
+    expect(bench.kind === 'learned' && bench.rungs[1]!.parts[0]!.mean).toBeCloseTo(b * weight * b * density(a) / tail, 2)
+  })
+
+  it('weighs the divisions by the closed form when two coats disagree at the sheet\'s middle', () => {
+    // Two scores of correlation r lie on different sides of their middle with chance 1/4 - asin(r) / 2 pi, in a given order; an answer says something 97 times in a hundred.
+    const disagree = (r: number) => 0.97 ** 2 * (0.25 - Math.asin(r) / (2 * Math.PI)) + (1 - 0.97 ** 2) / 4
+    const raw = [0.38 * disagree(0.97), 0.6 * disagree(0), 0.02 * disagree(6.25 / 6.61)]
+    const sum = raw.reduce((all, each) => all + each, 0)
+    const bench = learnBench(sheet.rungs.map(r => r.quantiles), [test(q(sheet, 1, 1), false), test(q(sheet, 1, 1), true)])
+    for (const [d, each] of raw.entries()) expect(bench.kind === 'learned' && bench.rungs[1]!.parts[d]!.weight).toBeCloseTo(each / sum, 2)
   })
 
   it('takes nothing from 20 first "reached" at eight times typical', () => {
