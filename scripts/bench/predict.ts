@@ -48,7 +48,7 @@ function benchOf(tools: DryingTools): Bench {
 
 /** A bench that has tested every rung of twelve coats. */
 function taught(sheet: PreparedMaterial, chance: () => number): PreparedMaterial {
-  const tests = sheet.rungs.flatMap((_, rung) => Array.from({ length: 12 }, (): BenchTest => ({ rung, log: chance() * 2 - 0.7, reached: chance() < 0.6, weight: 1, extra: 0.01 })))
+  const tests = sheet.rungs.flatMap((_, rung) => Array.from({ length: 12 }, (_, coat): BenchTest => ({ rung, coat, log: chance() * 2 - 0.7, reached: chance() < 0.6, weight: 1, extra: 0.01 })))
   const bench = learnBench(sheet.rungs.map(r => r.quantiles), tests)
   return bench.kind === 'learned' ? withLearned(sheet, bench) : sheet
 }

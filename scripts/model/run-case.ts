@@ -11,9 +11,9 @@ const iso = (at: number | null) => at === null ? null : new Date(at).toISOString
 
 /** What the studio's earlier coats teach about the material, as of `now`: tests made later are left out. */
 function benchOf(sheet: PreparedMaterial, { history, now }: ModelCase, tools: DryingTools): BenchSpeed {
-  const tests = history.flatMap(({ coat, room, witness }) => {
+  const tests = history.flatMap(({ coat, room, witness }, number) => {
     const asked = (coat.tests ?? []).map((test, i) => ({ ...test, weight: weightOf(test.at, now, []), witness: witness[i]! })).filter(test => test.at <= now)
-    return benchTests(sheet, coat, [{ clock: roomClock(room, coat.appliedAt, tools), fromAt: coat.appliedAt, toAt: null }], asked)
+    return benchTests(sheet, coat, [{ clock: roomClock(room, coat.appliedAt, tools), fromAt: coat.appliedAt, toAt: null }], asked, number)
   })
   return learnBench(sheet.rungs.map(rung => rung.quantiles), tests)
 }

@@ -17,7 +17,7 @@ export interface BenchState { signature: string, tests: KeptTest[] }
 
 /** Reads a stored state; null for none, or one that an older version wrote otherwise. */
 export function benchState(value: unknown): BenchState | null {
-  return typeof value === 'object' && value !== null && 'signature' in value && 'tests' in value && Array.isArray(value.tests) ? value as BenchState : null
+  return typeof value === 'object' && value !== null && 'signature' in value && 'tests' in value && Array.isArray(value.tests) ? { ...value as BenchState, tests: (value as BenchState).tests.map(test => ({ ...test, coat: test.coatId })) } : null
 }
 
 /** How many learned materials are kept ready in the process. */

@@ -81,7 +81,7 @@ function boundsOf(tx: Transaction, studioId: number, versionId: number, rows: re
     const material = preparedMaterials.prepare(sheet)
     for (const { test, coat: on } of fresh) {
       const asked = { at: test.at, milestone: test.milestone, reached: test.reached, byRole: test.byRole, weight: 1, witness: test.witnessId !== null }
-      const [bound] = benchTests(material, caseOf(on, facts), spansOf(on, facts, clockOf), [asked])
+      const [bound] = benchTests(material, caseOf(on, facts), spansOf(on, facts, clockOf), [asked], on.id)
       if (bound) found.set(test.id, { ...bound, testId: test.id, coatId: on.id })
     }
   }

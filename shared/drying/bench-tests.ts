@@ -26,15 +26,15 @@ export function weightOf(at: number, now: number, tinsOpenedAt: readonly number[
   return fadeOf((now - at) / dayMs) * newTinShare ** tinsOpenedAt.filter(opened => opened > at && opened <= now).length
 }
 
-/** A test as a bench learns from it: on which coat it was made, how much it counts, and whether on a witness board. */
+/** A test as a bench learns from it: how much it counts, and whether on a witness board. */
 export interface AskedTest extends TouchTest { weight: number, witness: boolean }
 
 /**
  * Turns one coat's touch tests into bounds on its rungs' clocks, by the air it stood in. Each test speaks of its own rung only: that a rung
  * below is reached too, or one above is not, follows from the order and would count the "not yet" of the slow coats alone.
- * Left out: a coat in sun or warm air (it teaches nothing about the material) and a helper's word, which shortens nobody's keep-out.
+ * `coatNumber` is any number that no other coat of the bench has. Left out: a coat in sun or warm air (it teaches nothing about the material) and a helper's word, which shortens nobody's keep-out.
  */
-export function benchTests(material: PreparedMaterial, coat: CoatCase, spans: readonly AirSpan[], tests: readonly AskedTest[]): BenchTest[] {
+export function benchTests(material: PreparedMaterial, coat: CoatCase, spans: readonly AirSpan[], tests: readonly AskedTest[], coatNumber: number): BenchTest[] {
   if ((coat.notes ?? []).some(n => n.kind === 'sun' || n.kind === 'warm air')) return []
   const told = tests.filter(t => t.byRole !== 'helper' && t.at > coat.appliedAt)
   if (told.length === 0) return []
@@ -48,6 +48,6 @@ export function benchTests(material: PreparedMaterial, coat: CoatCase, spans: re
     if (!(minutes > 0)) return []
     const stale = lastReadingAt === null ? staleVariance(24) : staleVariance((at - lastReadingAt) / hourMs)
     const ground = rung === 0 && coat.ground !== 'primed' ? groundVariance : 0
-    return [{ rung, log: Math.log(minutes / material.rungs[rung]!.typical), reached, weight, extra: clockVariance + extra + stale + ground + (witness ? witnessVariance : 0) }]
+    return [{ rung, coat: coatNumber, log: Math.log(minutes / material.rungs[rung]!.typical), reached, weight, extra: clockVariance + extra + stale + ground + (witness ? witnessVariance : 0) }]
   })
 }

@@ -7,6 +7,8 @@ import { normal } from '#shared/drying/normal'
 /** A touch test on its rung's clock, made ready for learning: a bound, not a time. */
 export interface BenchTest {
   rung: number
+  /** Tests of one coat carry one number: a coat that is slow is slow on all its rungs. */
+  coat: number
   /** ln of the reference minutes the film's clock showed at the test, over the rung's typical. */
   log: number
   reached: boolean
@@ -35,18 +37,25 @@ const gridStep = 0.25
 /** Offsets of a bench in units of a division's `bench`, and the ln of their standard normal prior. */
 const grid = Float64Array.from({ length: 2 * gridEnd / gridStep + 1 }, (_, i) => i * gridStep - gridEnd)
 const prior = grid.map(u => -u * u / 2)
+/** ln of the grid's own sum, so that evidence with no test is 0. */
+const priorEvidence = Math.log(prior.reduce((sum, p) => sum + Math.exp(p), 0))
 
-/** What the tests of one rung make of its offset under one division: ln of their evidence, and the offset's mean and variance. */
-interface Posterior { evidence: number, mean: number, variance: number }
+/** Variance in which the rungs of one coat differ, on the sheet's scale: what an even bench's coats differ in. */
+const rungVariance = 0.03
+
+/** ln of the chance of an answer given the score its film goes by. */
+function answerLog({ log, reached, weight, extra }: BenchTest, { middle, late, early }: SheetScale, score: number, variance: number): number {
+  const side = log > middle ? late : early
+  const sd = Math.sqrt(variance + extra / (side * side)) * (reached ? 1 : -1)
+  return weight * Math.log((1 - oddShare) * normal(((log - middle) / side - score) / sd) + oddShare / 2)
+}
+
+/** What the tests of one rung make of its offset under one division: ln of prior and likelihood along the grid, and the offset's mean and variance. */
+interface Posterior { logs: Float64Array, mean: number, variance: number }
 
 function posterior(tests: readonly BenchTest[], scale: SheetScale, { bench, coat }: typeof divisions[number]): Posterior {
   const logs = prior.slice()
-  for (const { log, reached, weight, extra } of tests) {
-    const side = log > scale.middle ? scale.late : scale.early
-    const score = (log - scale.middle) / side
-    const sd = Math.sqrt(coat * coat + extra / (side * side)) * (reached ? 1 : -1)
-    for (let i = 0; i < grid.length; i++) logs[i] = logs[i]! + weight * Math.log((1 - oddShare) * normal((score - bench * grid[i]!) / sd) + oddShare / 2)
-  }
+  for (const each of tests) for (let i = 0; i < grid.length; i++) logs[i] = logs[i]! + answerLog(each, scale, bench * grid[i]!, coat * coat)
   const top = Math.max(...logs)
   let mass = 0
   let first = 0
@@ -57,12 +66,42 @@ function posterior(tests: readonly BenchTest[], scale: SheetScale, { bench, coat
     first += p * grid[i]!
     second += p * grid[i]! ** 2
   }
-  return { evidence: top + Math.log(mass), mean: first / mass, variance: Math.max(1e-6, second / mass - (first / mass) ** 2) }
+  return { logs, mean: first / mass, variance: Math.max(1e-6, second / mass - (first / mass) ** 2) }
 }
 
-/** Chances of the divisions given all rungs: how even a bench is shows on every rung it tests. */
-function weighed(rungs: readonly (readonly Posterior[])[]): number[] {
-  const logs = divisions.map((division, d) => Math.log(division.weight) + rungs.reduce((sum, own) => sum + own[d]!.evidence, 0))
+/** ln of the mean of two chances given by their ln. */
+const eitherOr = (one: number, other: number) => Math.max(one, other) + Math.log((1 + Math.exp(-Math.abs(one - other))) / 2)
+
+/** ln of what a rung's tests, or those of all rungs together, say with the offset weighed out. */
+function weighedOut(rungs: readonly Float64Array[]): number {
+  const logs = prior.map((p, i) => p + rungs.reduce((sum, own) => sum + own[i]! - p, 0))
+  const top = Math.max(...logs)
+  return top + Math.log(logs.reduce((sum, log) => sum + Math.exp(log - top), 0)) - priorEvidence
+}
+
+/** ln of the evidence of a bench that is off: by one offset on all its rungs, or by one of its own on each, as likely as not. */
+const benchEvidence = (rungs: readonly Float64Array[]) => eitherOr(weighedOut(rungs), rungs.reduce((sum, own) => sum + weighedOut([own]), 0))
+
+/** Points of a coat's own score and their standard normal weights. */
+const scores = Array.from({ length: 33 }, (_, i) => (i - 16) / 4)
+const scoreWeights = scores.map(e => Math.exp(-e * e / 2) / 4 / Math.sqrt(2 * Math.PI))
+
+/** ln of the evidence where the bench is on the sheet and its coats differ by `coat`: by one score in all a coat's tests, or test by test, as likely as not. */
+function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], coat: number): number {
+  const own = Math.sqrt(coat * coat - rungVariance)
+  const coats = new Map<number, BenchTest[]>()
+  for (const each of tests) coats.set(each.coat, [...coats.get(each.coat) ?? [], each])
+  const together = [...coats.values()].reduce((sum, of) => sum + Math.log(scores.reduce((all, e, i) =>
+    all + scoreWeights[i]! * Math.exp(of.reduce((log, each) => log + answerLog(each, scales[each.rung]!, own * e, rungVariance), 0)), 0)), 0)
+  return eitherOr(together, tests.reduce((sum, each) => sum + answerLog(each, scales[each.rung]!, 0, coat * coat), 0))
+}
+
+/**
+ * Chances of the divisions given all tests: how even a bench is shows on every rung it tests. Rungs often go together, on a bench and on a coat, and sometimes do not:
+ * each division weighs both. Counted test by test alone, a coat tested on five rungs would speak five times.
+ */
+function weighed(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], rungs: readonly (readonly Posterior[])[]): number[] {
+  const logs = divisions.map(({ bench, coat, weight }, d) => Math.log(weight) + (bench === 0 ? coatEvidence(tests, scales, coat) : benchEvidence(rungs.map(own => own[d]!.logs))))
   const best = Math.max(...logs)
   const raw = logs.map(log => Math.exp(log - best))
   const all = raw.reduce((sum, w) => sum + w, 0)
@@ -97,7 +136,7 @@ function speedBand(rungs: readonly { scale: SheetScale, own: readonly Posterior[
 
 /**
  * Learns a bench from the touch tests of its coats of one material. `quantiles` are the sheet's tables of the rungs, in ladder order. The
- * order of the tests is irrelevant. A rung's offset is taught by its own tests alone; how even the bench is, by all. A rung that was
+ * order of the tests is irrelevant. A rung's offset is taught by its own tests alone; how even the bench is, by all, coat by coat. A rung that was
  * never tested stays on the sheet. See docs/model.md for why this form, and what it reaches.
  */
 export function learnBench(quantiles: readonly QuantileTable[], tests: readonly BenchTest[]): BenchSpeed {
@@ -109,7 +148,7 @@ export function learnBench(quantiles: readonly QuantileTable[], tests: readonly 
   })
   const tested = rungs.filter(rung => rung !== null)
   if (tested.length === 0) return sheetSpeed
-  const weights = weighed(tested.map(rung => rung.own))
+  const weights = weighed(tests.filter(test => rungs[test.rung] && test.weight > 0), rungs.map(rung => rung && rung.scale), tested.map(rung => rung.own))
   return {
     kind: 'learned',
     rungs: rungs.map(rung => rung && {

@@ -45,7 +45,7 @@ export function bandPicture(sheet: PreparedMaterial, rung: number): string {
   const rows = [0, 1, 3, 6, 12].map((coats) => {
     while (tests.length < coats) {
       const log = chance.between(Math.log(0.3), Math.log(4))
-      tests.push({ rung, log, reached: 0.4 + 0.12 * chance.normal() <= log, weight: 1, extra: 0.01 })
+      tests.push({ rung, coat: tests.length, log, reached: 0.4 + 0.12 * chance.normal() <= log, weight: 1, extra: 0.01 })
     }
     const bench = learnBench(sheet.rungs.map(r => r.quantiles), tests)
     return { coats, values: (bench.kind === 'learned' ? withLearned(sheet, bench) : sheet).rungs[rung]!.quantiles.values.map(row => row[0]!) }

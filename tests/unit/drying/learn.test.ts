@@ -13,15 +13,17 @@ import { at, coatAt, dayMs, materialWith, minuteMs, steadyRoom, tools } from '..
 
 const now = at('2026-03-02T08:00:00Z')
 const sheet = prepareMaterial(materialWith(), tools)
-const test = (log: number, reached: boolean, over: Partial<BenchTest> = {}): BenchTest => ({ rung: 1, log, reached, weight: 1, extra: 0, ...over })
+let coats = 0
+/** A test on a coat of its own, unless told. */
+const test = (log: number, reached: boolean, over: Partial<BenchTest> = {}): BenchTest => ({ rung: 1, coat: ++coats, log, reached, weight: 1, extra: 0, ...over })
 const learned = (tests: BenchTest[]): PreparedMaterial => {
   const bench = learnBench(sheet.rungs.map(r => r.quantiles), tests)
   return bench.kind === 'learned' ? withLearned(sheet, bench) : sheet
 }
 /** ln of a chance's time over typical: 0 is 10 %, 1 likely, 2 give-till, 3 is 98 %. */
 const q = (material: PreparedMaterial, rung: number, chance: number) => material.rungs[rung]!.quantiles.values[chance]![0]!
-const bracket = (log: number, width: number, coats: number) => Array.from({ length: coats }, () => [test(log - width, false), test(log + width, true)]).flat()
-const tests = fc.array(fc.record({ rung: fc.integer({ min: 0, max: 2 }), log: fc.double({ min: -2, max: 2, noNaN: true }), reached: fc.boolean(), weight: fc.constant(1), extra: fc.constant(0) }), { maxLength: 12 })
+const bracket = (log: number, width: number, times: number) => Array.from({ length: times }, () => [test(log - width, false), test(log + width, true, { coat: coats })]).flat()
+const tests = fc.array(fc.record({ rung: fc.integer({ min: 0, max: 2 }), coat: fc.integer({ min: 1, max: 6 }), log: fc.double({ min: -2, max: 2, noNaN: true }), reached: fc.boolean(), weight: fc.constant(1), extra: fc.constant(0) }), { maxLength: 12 })
 
 describe('what a bench learns from its tests', () => {
   it('without tests says what the sheet says, to the bit', () => {
