@@ -11,7 +11,7 @@ import { grouped } from '#shared/grouped'
 import { openSpans } from '#shared/open-hours'
 import type { OpenHours } from '#shared/open-hours'
 import type { PieceState, SessionState, StudioState } from '#shared/schemas/piece-state'
-import { usualHandTests } from '#shared/words/hand-tests'
+import { handTests } from '#shared/library/hand-tests'
 import type { OwnHandTest } from '#shared/words/hand-tests'
 import { addDays, fromLocal, localDate, startOfLocalDay, studioZone } from '#shared/time'
 
@@ -42,7 +42,7 @@ export function studioState(db: Database, owner: StudioRow, now: number): Studio
 function ownHandTests(db: Database, studioId: number, pieces: readonly PieceState[]): OwnHandTest[] {
   const on = new Set(pieces.flatMap(piece => piece.groups.flatMap(group => group.films.map(film => film.materialVersionId))))
   return db.select({ versionId: milestone.versionId, milestone: milestone.name, text: milestone.handTest }).from(milestone).where(scoped(milestone, studioId)).all()
-    .filter(each => on.has(each.versionId) && each.text !== usualHandTests[each.milestone])
+    .filter(each => on.has(each.versionId) && each.text !== handTests[each.milestone])
 }
 
 const studioHours = (db: Database, studioId: number): OpenHours => ({

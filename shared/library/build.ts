@@ -3,7 +3,6 @@ import type { CautionKey } from '#shared/library/cautions'
 import { handTests } from '#shared/library/hand-tests'
 import { requiredCautions } from '#shared/library/required-cautions'
 import { figureUnits } from '#shared/library/types'
-import { usualHandTests } from '#shared/words/hand-tests'
 import type { FigureName, LibraryFigure, LibraryMaterial, LibraryMilestone, LibraryWindow, MaterialKind, Solvent, Sourced } from '#shared/library/types'
 
 type Span = readonly [low: number, typical: number, high: number]
@@ -21,7 +20,7 @@ export const planning: Sourced = { source: 'planning value', key: 'planning valu
 
 /** A rung in minutes. Without `handTest` it takes the trade's usual one for that milestone. */
 export function rung(name: MilestoneName, driver: Driver, [low, typical, high]: Span, from: Sourced, handTest?: string | null): LibraryMilestone {
-  return { name, driver, low, typical, high, handTest: handTest === undefined ? usualHandTests[name] : handTest, ...from }
+  return { name, driver, low, typical, high, handTest: handTest === undefined ? handTests[name] : handTest, ...from }
 }
 
 /** A recoat window in minutes; `recovery` is the work, of `recoveryMin` minutes a piece, that a missed one asks for. */

@@ -1,19 +1,5 @@
+import { handTests } from '#shared/library/hand-tests'
 import type { MilestoneName } from '#shared/terms'
-
-/** How the trade tests a rung by hand; null where no hand can tell. A material may have its own. */
-export const usualHandTests: Record<MilestoneName, string | null> = {
-  'set-to-touch': 'A light fingertip at an edge comes away clean.',
-  'dust-free': 'A fibre dropped on it can be blown off.',
-  'tack-free': 'A tissue pressed on it leaves no fibres.',
-  'at-tack': 'A knuckle drawn across it squeaks and comes away clean.',
-  'dry-to-handle': 'A thumb pressed and turned a quarter leaves no mark.',
-  'dry-to-sand-lightly': 'Fine paper lifts dry powder and does not clog.',
-  'dry-to-sand-flat': 'Paper on a block lifts dry powder all over and does not clog.',
-  'ready-to-recoat': 'It is no longer cool to the back of the hand.',
-  'out-of-clamps': 'The line of squeezed-out glue is firm under a fingernail.',
-  'full-strength': null,
-  'cured': 'It has no smell, and a fingernail leaves no dent at an edge.',
-}
 
 /** Where a material's own test of a rung differs from the trade's. */
 export interface OwnHandTest { versionId: number, milestone: MilestoneName, text: string | null }
@@ -21,7 +7,7 @@ export interface OwnHandTest { versionId: number, milestone: MilestoneName, text
 /** How a rung of a material is tested by hand; null where no hand can tell. */
 export function handTestOf(own: readonly OwnHandTest[], versionId: number | null, milestone: MilestoneName): string | null {
   const found = own.find(each => each.versionId === versionId && each.milestone === milestone)
-  return found ? found.text : usualHandTests[milestone]
+  return found ? found.text : handTests[milestone]
 }
 
 export const testWords = {
