@@ -13,6 +13,8 @@ export const scheduleWords = {
   failedOne: 'This finishing schedule could not be fetched.',
   empty: 'There are no finishing schedules here',
   back: 'All finishing schedules',
+  backOne: 'The schedule as it stands',
+  one: 'the schedule',
   start: 'Start a batch with it',
   elapsed: 'Elapsed',
   handsOn: 'Hands-on',

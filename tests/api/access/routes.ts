@@ -154,7 +154,7 @@ export const routes: Record<string, RouteCase> = {
   'schedules/[id].put.ts': { least: 'maker', apart: 'row', at: 'schedule', body: rows => ({ baseNo: 90, draft: washDraft(rows.material) }) },
   'schedules/[id].patch.ts': { least: 'maker', apart: 'row', at: 'schedule', body: () => ({ archived: false }) },
   // Nothing was done to the first studio's piece that a schedule could be made of.
-  'pieces/[id]/schedule-draft.get.ts': { least: 'maker', apart: 'row', at: 'piece' },
+  'pieces/[id]/schedule-draft.get.ts': { least: 'maker', apart: 'row', at: 'piece', asLeast: 422 },
   'state.get.ts': { least: 'wall', apart: 'view' },
   'batches/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ clientKey: clientKey(), name: 'Boxes', scheduleId: null, pieces: ['Box 1'], placeId: rows.place, order: null, startsAt: recently() }) },
   // Its shelf is another studio's: told as a field that is wrong.

@@ -1,0 +1,195 @@
+import type { Browser, Locator, Page } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
+import { startServer } from '../helpers/server'
+import type { TestServer } from '../helpers/server'
+import { firstStudio, joinAs } from '../helpers/sign-in'
+import type { Visitor } from '../helpers/sign-in'
+import { roomOf } from '../api/access/rows'
+
+let server: TestServer
+let browser: Browser
+let owner: Visitor
+let maker: Visitor
+let helper: Visitor
+
+beforeAll(async () => {
+  server = await startServer()
+  owner = await firstStudio(server.origin)
+  maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
+  helper = await joinAs(server.origin, owner, 'helper', 'hazel@example.test')
+  const { body: room } = await owner.post<{ id: number }>('/api/rooms', roomOf('Bench'))
+  await owner.post('/api/places', { roomId: room.id, name: 'Shelf A', kind: 'shelf', capacity: 20, sort: 0 })
+  browser = await openBrowser()
+})
+afterAll(async () => {
+  await browser.close()
+  await server.stop()
+})
+
+const isFocused = (what: Locator) => what.evaluateAll(found => found.some(each => each === document.activeElement))
+
+/** Tabs on until the focus is there; nothing else brings it there. */
+async function tabTo(page: Page, what: Locator) {
+  for (let presses = 0; presses < 150; presses++) {
+    if (await isFocused(what)) return
+    await page.keyboard.press('Tab')
+  }
+  throw new Error(`Tab does not come to ${what}.`)
+}
+async function press(page: Page, what: Locator) {
+  await tabTo(page, what)
+  await page.keyboard.press('Enter')
+}
+const key = (page: Page, name: string | RegExp) => page.getByRole('button', { name, exact: typeof name === 'string' })
+const dialog = (page: Page) => page.getByRole('dialog', { name: 'Add a step' })
+const steps = (page: Page) => page.locator('[id^="open-"]')
+const elapsed = (page: Page) => page.locator('[data-elapsed]')
+
+describe('a schedule made by keyboard only', () => {
+  it('has its steps, waits and times, and is kept', async () => {
+    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, maker)
+    await visit(page, '/schedules')
+    await press(page, page.getByRole('link', { name: 'New schedule' }))
+    await tabTo(page, page.getByRole('textbox', { name: 'Name', exact: true }))
+    await page.keyboard.type('Ledger boards')
+
+    await press(page, key(page, 'Add a step').first())
+    await tabTo(page, dialog(page).getByRole('searchbox'))
+    await page.keyboard.type('acrylic ges')
+    await page.keyboard.press('Tab')
+    await page.keyboard.press('Space')
+    await press(page, dialog(page).getByRole('button', { name: 'Put it in' }).last())
+    await dialog(page).waitFor({ state: 'hidden' })
+    expect(await steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso')])
+
+    await press(page, key(page, 'Add a step').last())
+    // Coat, glue up, sand lightly: two to the right.
+    await tabTo(page, dialog(page).getByRole('radio', { name: 'Coat', exact: true }))
+    await page.keyboard.press('ArrowRight')
+    await page.keyboard.press('ArrowRight')
+    await press(page, dialog(page).getByRole('button', { name: 'Put it in' }).last())
+    await dialog(page).waitFor({ state: 'hidden' })
+    await expect.poll(() => steps(page).last().innerText()).toContain('Until acrylic gesso is dry to sand lightly')
+    const before = await elapsed(page).innerText()
+
+    // A round of two coats a day: the steady line answers while it is typed.
+    await press(page, steps(page).first())
+    await tabTo(page, page.getByRole('textbox', { name: 'Times a day' }))
+    await page.keyboard.press('Control+A')
+    await page.keyboard.type('2')
+    await expect.poll(() => elapsed(page).innerText()).not.toBe(before)
+
+    // Moved down and up again by its keys; the focus stays on the key.
+    await press(page, key(page, 'Move down: Acrylic gesso'))
+    await expect.poll(() => steps(page).first().innerText()).toContain('Sand lightly')
+    await press(page, key(page, 'Move up: Acrylic gesso'))
+    await expect.poll(() => steps(page).first().innerText()).toContain('Acrylic gesso')
+
+    // Taken out and taken back.
+    await press(page, key(page, 'Take out: Acrylic gesso'))
+    await expect.poll(() => steps(page).count()).toBe(1)
+    await press(page, key(page, /^Undo: acrylic gesso taken out/))
+    await expect.poll(() => steps(page).count()).toBe(2)
+    expect(await axeProblems(page)).toEqual([])
+
+    // A press on the times gives their reasons.
+    await press(page, page.getByRole('button', { name: /^Elapsed/ }))
+    await page.getByRole('dialog').getByText('until acrylic gesso is dry to sand lightly').waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.keyboard.press('Escape')
+
+    await press(page, key(page, 'Keep this schedule'))
+    await page.waitForURL(/\/schedules\/\d+$/)
+    await page.getByText('2 times').waitFor()
+    expect(problems).toEqual([])
+  })
+})
+
+describe('a schedule made by touch on a phone', () => {
+  it('takes three taps for a coat more, refuses what cannot be with the step named, and starts a batch', async () => {
+    const { page, problems } = await openPage(browser, server.origin, { hasTouch: true, isMobile: true }, maker)
+    await visit(page, '/schedules/new')
+    await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Small box')
+    let taps = 0
+    const tap = async (what: Locator) => {
+      await what.tap()
+      taps++
+    }
+    await tap(key(page, 'Add a step').last())
+    await dialog(page).getByRole('searchbox').fill('acrylic gesso')
+    await tap(dialog(page).getByText('Acrylic gesso', { exact: true }))
+    await tap(dialog(page).getByRole('button', { name: 'Put it in' }).last())
+    taps = 0
+    // Its material stands first now, since the schedule uses it already; its faces are those of the step before.
+    await tap(key(page, 'Add a step').last())
+    await tap(dialog(page).getByText('Acrylic gesso', { exact: true }))
+    await tap(dialog(page).getByRole('button', { name: 'Put it in' }).last())
+    expect(taps).toBe(3)
+    await expect.poll(() => steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso'), expect.stringContaining('Until acrylic gesso is ready to recoat')])
+
+    // A reload loses nothing.
+    await page.reload({ waitUntil: 'load' })
+    await page.getByText('This is your draft from last time.').waitFor()
+    expect(await steps(page).count()).toBe(2)
+    expect(await page.getByRole('textbox', { name: 'Name', exact: true }).inputValue()).toBe('Small box')
+
+    // With no face left it cannot be kept, and the sentence names it.
+    await steps(page).last().tap()
+    await page.getByText('Piece, all of it').last().tap()
+    await page.getByText('“Acrylic gesso, second time” works on no part. Choose its faces.').first().waitFor()
+    await key(page, 'Keep this schedule').tap()
+    await page.getByRole('alert').filter({ hasText: '1 thing cannot be' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await key(page, /^Undo/).tap()
+    await key(page, 'Keep this schedule').tap()
+    await page.waitForURL(/\/schedules\/\d+$/)
+
+    await page.getByRole('link', { name: 'Start a batch with it' }).tap()
+    await page.getByRole('radio', { name: /^Small box/, checked: true }).waitFor()
+    await page.getByLabel('Name of the batch').fill('Tea boxes')
+    await page.getByRole('textbox', { name: 'How many pieces' }).fill('2')
+    await page.getByLabel('Where they stand at first').selectOption({ index: 1 })
+    await page.getByRole('button', { name: 'Start the batch' }).tap()
+    await page.waitForURL(/\/hands/)
+    await page.getByRole('heading', { name: /Acrylic gesso Tea boxes 1/ }).first().waitFor()
+    expect(problems).toEqual([])
+  })
+})
+
+describe('two editors at once', () => {
+  it('the later keeps the draft, sees what changed, and saves on top', async () => {
+    const list = (await maker.get<{ id: number, libraryKey: string }[]>('/api/schedules')).body
+    const id = list.find(each => each.libraryKey === 'oiled-bowl')!.id
+    const open = async (who: Visitor) => {
+      const watched = await openPage(browser, server.origin, { viewport: { width: 834, height: 1100 } }, who)
+      await visit(watched.page, `/schedules/${id}/edit`)
+      return watched.page
+    }
+    const [first, second] = [await open(owner), await open(maker)]
+    await first.getByRole('textbox', { name: 'What it is for' }).fill('For salad.')
+    await first.getByRole('button', { name: 'Save as edition 2' }).click()
+    await first.waitForURL(/\/schedules\/\d+$/)
+    await second.getByRole('textbox', { name: 'Name', exact: true }).fill('Bowl our way')
+    await second.getByRole('button', { name: 'Save as edition 2' }).click()
+    const told = second.getByRole('alert').filter({ hasText: 'Somebody else saved it first' })
+    await told.getByText('What it is for').waitFor()
+    expect(await second.getByRole('textbox', { name: 'Name', exact: true }).inputValue()).toBe('Bowl our way')
+    expect(await axeProblems(second)).toEqual([])
+    await told.getByRole('button', { name: 'Save mine on top of edition 2' }).click()
+    await second.waitForURL(/\/schedules\/\d+$/)
+    await visit(second, `/schedules/${id}/editions`)
+    expect(await second.getByRole('heading', { level: 2 }).allInnerTexts()).toEqual(['Edition 3, the newest', 'Edition 2', 'Edition 1'])
+    expect(await axeProblems(second)).toEqual([])
+  })
+})
+
+describe('a helper', () => {
+  it('reads schedules and their editions, and is offered no change', async () => {
+    const { page } = await openPage(browser, server.origin, {}, helper)
+    await visit(page, '/schedules')
+    expect(await page.getByRole('link', { name: 'New schedule' }).count()).toBe(0)
+    await visit(page, '/schedules/new')
+    await page.getByText('Makers and owners change finishing schedules.').waitFor()
+  })
+})
