@@ -110,6 +110,7 @@ export const stepFields = {
   release: 'Take out, each piece',
   hands: 'Pairs of hands',
   dust: 'Dust it makes',
+  whoChange: 'Change what helpers may do',
   runOver: 'May run over closing time',
   runOverHint: 'Work that can be left lying and taken up again.',
   checks: 'Checks while it rests',

@@ -99,9 +99,12 @@ describe('a schedule made by keyboard only', () => {
     expect(await axeProblems(page)).toEqual([])
     await page.keyboard.press('Escape')
 
+    const drawn = await elapsed(page).innerText()
     await press(page, key(page, 'Keep this schedule'))
     await page.waitForURL(/\/schedules\/\d+$/)
     await page.getByText('2 times').waitFor()
+    // What the editor reckoned is what the studio says.
+    await page.getByText(drawn, { exact: true }).waitFor()
     expect(problems).toEqual([])
   })
 })
