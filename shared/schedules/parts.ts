@@ -10,6 +10,14 @@ export function addPart(draft: ScheduleDraft, given: { name: string, meetsAt: st
   return step ? changeStep(added, step.key, { targets: [...step.targets, { part: part.key, face: null }] }, sheets) : added
 }
 
+/** Where a step more of a part's own branch belongs in the list: after its last one, else before the step where it meets the rest, else at the end. */
+export function branchEnd({ steps }: ScheduleDraft, partKey: string): number {
+  const alone = steps.findLastIndex(step => step.targets.length > 0 && step.targets.every(target => target.part === partKey))
+  if (alone >= 0) return alone + 1
+  const meeting = steps.findIndex(step => step.targets.some(target => target.part === partKey))
+  return meeting >= 0 ? meeting : steps.length
+}
+
 /** Renames a part or says where to hold it. */
 export function changePart(draft: ScheduleDraft, key: string, patch: Partial<Pick<DraftPart, 'name' | 'grip'>>): ScheduleDraft {
   return { ...draft, parts: draft.parts.map(part => (part.key === key ? { ...part, ...patch } : part)) }

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { changeStep, copyStep, freeKey, moveStep, removeLink, removeStep, setLink } from '#shared/schedules/edit'
-import { addFace, addPart, removeFace, removePart } from '#shared/schedules/parts'
+import { changeStep, copyStep, freeKey, freshStep, insertStep, moveStep, removeLink, removeStep, setLink } from '#shared/schedules/edit'
+import { addFace, addPart, branchEnd, removeFace, removePart } from '#shared/schedules/parts'
 import { draftProblems } from '#shared/schedules/problems'
 import { librarySchedules } from '#shared/library/index'
 import { libraryOne, linkTexts, materialOf, on, panelWith, sheets } from './drafts'
@@ -102,6 +102,16 @@ describe('parts and faces', () => {
     const joined = addPart(draft, { name: 'Knob', meetsAt: 'fit' }, sheets)
     expect(joined.steps[1]?.targets).toEqual(on('panel knob'))
     expect(linkTexts(joined)).toEqual(linkTexts(draft))
+  })
+
+  it('have steps of a branch before the step where they meet', () => {
+    const draft = addPart(panelWith({ key: 'a', kind: 'coat', with: 'acrylic-gesso', targets: on('panel') }, { key: 'fit', kind: 'bench work', targets: on('panel') }), { name: 'Knob', meetsAt: 'fit' }, sheets)
+    expect(branchEnd(draft, 'knob')).toBe(1)
+    const turned = insertStep(draft, freshStep(draft, { key: 'turn', kind: 'bench work', materialId: null, targets: on('knob') }, sheets), 1, sheets)
+    expect(linkTexts(turned)).toContain('turn > fit: done p90')
+    expect(branchEnd(turned, 'knob')).toBe(2)
+    expect(branchEnd(addPart(turned, { name: 'Screw', meetsAt: null }, sheets), 'screw')).toBe(3)
+    expect(draftProblems(turned, sheets)).toEqual([])
   })
 
   it('go with the steps that worked on nothing else', () => {
