@@ -69,7 +69,10 @@ export const scheduleStepTarget = sqliteTable('schedule_step_target', {
   faceId: integer('face_id'),
 }, t => [studioKey(t), within(t, t.stepId, scheduleStep), within(t, t.partId, schedulePart), within(t, t.faceId, scheduleFace)])
 
-/** `to` may begin when `from` has reached `milestone` at `risk` (no milestone: when its work is done), inside the window if one is named. */
+/**
+ * `to` may begin when `from` has reached `milestone` at `risk` (no milestone: when its work is done), inside the window if
+ * one is named. `recovery` is what a missed window asks for here; null: what the material's sheet says.
+ */
 export const scheduleLink = sqliteTable('schedule_link', {
   studioId: studioColumn(),
   fromStepId: integer('from_step_id').notNull(),
@@ -77,6 +80,8 @@ export const scheduleLink = sqliteTable('schedule_link', {
   milestone: text('milestone').$type<MilestoneName>(),
   risk: text('risk').$type<Risk>().notNull().default('p90'),
   windowed: flag('windowed').notNull().default(false),
+  recovery: text('recovery'),
+  recoveryMin: integer('recovery_min'),
 }, t => [
   primaryKey({ columns: [t.fromStepId, t.toStepId] }), within(t, t.fromStepId, scheduleStep), within(t, t.toStepId, scheduleStep),
   oneOf('schedule_link_milestone', t.milestone, milestoneNames), oneOf('schedule_link_risk', t.risk, risks),

@@ -1,10 +1,10 @@
 import { and, eq, isNull } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/sqlite-core'
-import { act, coat, pieceStep, recoatWindow, turn, windowPrediction } from '~~/db/schema'
+import { act, coat, pieceStep, recoatWindow, scheduleLink, turn, windowPrediction } from '~~/db/schema'
 import { pieceStates } from '~~/server/services/piece-states'
 import { change } from '~~/server/utils/change'
 import type { Database, Transaction } from '~~/server/utils/database'
-import { scoped } from '~~/server/utils/scoped'
+import { owned, scoped } from '~~/server/utils/scoped'
 import { predictPieces } from '~~/server/work/predict'
 import { insertAct, piecesOf, subjectsOf } from '~~/server/work/record'
 import { refold } from '~~/server/work/refold'
@@ -42,13 +42,21 @@ function findMissed(db: Database, studioId: number, now: number): Missed[] {
     const own = open.step.status === 'resting'
     const from = own ? { key: open.step.key, id: open.step.id } : keyBefore(db, studioId, piece.id, begin.because.step)
     if (!from) return []
-    const recovery = recoveryAfter(db, studioId, from.id)
+    const recovery = (own ? null : agreedBetween(db, studioId, from.id, open.step.id)) ?? recoveryAfter(db, studioId, from.id)
     return [{ pieceId: piece.id, from: from.key, to: open.step.key, recovery: recovery?.recovery ?? null, minutes: recovery?.recoveryMin ?? 10, partIds: open.partIds }]
   }))
 }
 
 function keyBefore(db: Database, studioId: number, pieceId: number, name: string) {
   return db.select({ key: pieceStep.key, id: pieceStep.id }).from(pieceStep).where(scoped(pieceStep, studioId, eq(pieceStep.pieceId, pieceId), eq(pieceStep.name, name))).get() ?? null
+}
+
+/** What the schedule itself says a missed window between two steps asks for. */
+function agreedBetween(db: Database, studioId: number, fromId: number, toId: number) {
+  const scheduled = (id: number) => db.select({ id: pieceStep.scheduleStepId }).from(pieceStep).where(owned(pieceStep, studioId, id)).get()?.id ?? 0
+  const row = db.select({ recovery: scheduleLink.recovery, recoveryMin: scheduleLink.recoveryMin }).from(scheduleLink)
+    .where(scoped(scheduleLink, studioId, eq(scheduleLink.fromStepId, scheduled(fromId)), eq(scheduleLink.toStepId, scheduled(toId)))).get()
+  return row?.recovery ? { recovery: row.recovery, recoveryMin: row.recoveryMin ?? 10 } : null
 }
 
 function recoveryAfter(db: Database, studioId: number, stepId: number) {

@@ -3,11 +3,14 @@ import { scheduleCheck, scheduleFace, scheduleLink, schedulePart, scheduleStep, 
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 
+/** Minutes of a recovery that nobody timed (planning value). */
+const usualRecovery = 10
+
 /** An edition of a finishing schedule with all its rows, as a piece is started from it. */
 export interface ScheduleEdition {
   parts: (typeof schedulePart.$inferSelect & { faces: (typeof scheduleFace.$inferSelect)[] })[]
   steps: (typeof scheduleStep.$inferSelect & { targets: { partKey: string, faceKey: string | null }[], checks: (typeof scheduleCheck.$inferSelect)[] })[]
-  links: { from: string, to: string, milestone: typeof scheduleLink.$inferSelect['milestone'], risk: typeof scheduleLink.$inferSelect['risk'], windowed: boolean }[]
+  links: { from: string, to: string, milestone: typeof scheduleLink.$inferSelect['milestone'], risk: typeof scheduleLink.$inferSelect['risk'], windowed: boolean, recovery: { name: string, minutes: number } | null }[]
 }
 
 /** Reads one edition. An edition in use is frozen, so callers may keep what they read for the length of a request. */
@@ -32,6 +35,6 @@ export function readEdition(db: Database | Transaction, studioId: number, versio
       targets: targets.filter(target => target.stepId === step.id).map(target => ({ partKey: partKeys.get(target.partId) ?? '', faceKey: target.faceId === null ? null : faceKeys.get(target.faceId) ?? null })),
       checks: checks.filter(check => check.stepId === step.id),
     })),
-    links: links.map(link => ({ from: stepKeys.get(link.fromStepId) ?? '', to: stepKeys.get(link.toStepId) ?? '', milestone: link.milestone, risk: link.risk, windowed: link.windowed })),
+    links: links.map(link => ({ from: stepKeys.get(link.fromStepId) ?? '', to: stepKeys.get(link.toStepId) ?? '', milestone: link.milestone, risk: link.risk, windowed: link.windowed, recovery: link.recovery === null ? null : { name: link.recovery, minutes: link.recoveryMin ?? usualRecovery } })),
   }
 }

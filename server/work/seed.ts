@@ -12,7 +12,7 @@ const checkOrdinal = 500
  */
 export function seedOf(parts: readonly SeedPart[], edition: ScheduleEdition | null, materials: Readonly<Record<string, number>>): Seed {
   if (!edition) return { parts, steps: [], links: [] }
-  return { parts, steps: edition.steps.map(step => seedStep(step, parts, materials[step.key] ?? null)), links: edition.links }
+  return { parts, steps: edition.steps.map(step => seedStep(step, parts, materials[step.key] ?? null)), links: edition.links.map(({ recovery: _recovery, ...link }) => link) }
 }
 
 function seedStep(step: ScheduleEdition['steps'][number], parts: readonly SeedPart[], materialVersionId: number | null): Step {

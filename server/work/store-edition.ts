@@ -34,7 +34,7 @@ function storeSteps(tx: Transaction, studioId: number, versionId: number, draft:
 export function storeEdition(tx: Transaction, studioId: number, scheduleId: number, no: number, draft: ScheduleDraft): number {
   const versionId = tx.insert(scheduleVersion).values({ studioId, scheduleId, no, summary: draft.summary }).returning({ id: scheduleVersion.id }).get().id
   const steps = storeSteps(tx, studioId, versionId, draft, storeParts(tx, studioId, versionId, draft))
-  const links = draft.links.map(({ from, to, ...link }) => ({ studioId, fromStepId: steps.get(from) ?? 0, toStepId: steps.get(to) ?? 0, ...link }))
+  const links = draft.links.map(({ from, to, recovery, ...link }) => ({ studioId, fromStepId: steps.get(from) ?? 0, toStepId: steps.get(to) ?? 0, ...link, recovery: recovery?.name ?? null, recoveryMin: recovery?.minutes ?? null }))
   if (links.length > 0) tx.insert(scheduleLink).values(links).run()
   return versionId
 }

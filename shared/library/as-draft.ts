@@ -21,6 +21,6 @@ export function libraryDraft(schedule: LibrarySchedule, materials: readonly Libr
       ...step, materialId: numberOf(material), hold: hold ?? null, placeKind: placeKind ?? null,
       targets: targets.map(({ part, face }) => ({ part, face: face ?? null })), checks: checks.map(check => ({ ...check })),
     })),
-    links: schedule.links.map(link => ({ ...link })),
+    links: schedule.links.map(link => ({ ...link, recovery: null })),
   }
 }

@@ -54,7 +54,7 @@ function linkChanges(before: ScheduleDraft, after: ScheduleDraft): ScheduleChang
       const old = find(before, link)
       const said = { of: nameOf(after, link.to), after: nameOf(after, link.from) }
       if (!old) return [{ code: 'wait added', ...said }]
-      return old.milestone === link.milestone && old.risk === link.risk && old.windowed === link.windowed ? [] : [{ code: 'wait changed', ...said }]
+      return old.milestone === link.milestone && old.risk === link.risk && old.windowed === link.windowed && same(old.recovery, link.recovery) ? [] : [{ code: 'wait changed', ...said }]
     }),
   ]
 }

@@ -36,7 +36,7 @@ export function milestonesAfter(step: Pick<DraftStep, 'kind' | 'materialId'>, sh
  */
 export function linkBetween(from: DraftStep, to: DraftStep, sheets: Sheets): DraftLink {
   const sheet = sheetOf(from, sheets)
-  const done: DraftLink = { from: from.key, to: to.key, milestone: null, risk: 'p90', windowed: false }
+  const done: DraftLink = { from: from.key, to: to.key, milestone: null, risk: 'p90', windowed: false, recovery: null }
   if (!sheet) return done
   const has = milestonesAfter(from, sheets)
   const { rungs, risk } = wantedBy[to.kind]
@@ -50,5 +50,5 @@ export function mendedLink(link: DraftLink, from: DraftStep, to: DraftStep, shee
   const sheet = sheetOf(from, sheets)
   const fits = link.milestone === null ? sheet === null || link.windowed : milestonesAfter(from, sheets).includes(link.milestone)
   if (!fits) return linkBetween(from, to, sheets)
-  return link.windowed && (sheet?.drying.windows.length ?? 0) === 0 ? { ...link, windowed: false } : link
+  return link.windowed && (sheet?.drying.windows.length ?? 0) === 0 ? { ...link, windowed: false, recovery: null } : link
 }

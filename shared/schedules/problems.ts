@@ -10,7 +10,7 @@ export type ScheduleProblemCode =
   | 'no name' | 'no step' | 'no part' | 'part unnamed' | 'part twice' | 'face unnamed' | 'face twice' | 'key twice'
   | 'step unnamed' | 'touches nothing' | 'no such part' | 'no such face' | 'lays nothing' | 'no such material' | 'lays none' | 'joins one'
   | 'held for nothing' | 'nobody takes it out' | 'no minutes' | 'check unnamed' | 'checks out of order'
-  | 'no such step' | 'wait twice' | 'waits for itself' | 'nothing dries' | 'no such milestone' | 'no window' | 'window shuts first'
+  | 'no such step' | 'wait twice' | 'waits for itself' | 'nothing dries' | 'no such milestone' | 'no window' | 'window shuts first' | 'recovery unnamed'
   | 'circle' | 'apart' | 'no order' | 'never over' | 'too soon over' | 'no end' | 'window narrow' | 'round too tight'
 
 /**
@@ -74,6 +74,7 @@ function linkProblems(draft: ScheduleDraft, link: DraftLink, sheets: Sheets): Sc
   if (!sheet) return link.milestone !== null || link.windowed ? [refused('nothing dries', at)] : []
   return [
     ...link.milestone !== null && !milestonesAfter(from, sheets).includes(link.milestone) ? [refused('no such milestone', { ...at, what: link.milestone })] : [],
+    ...link.recovery !== null && link.recovery.name === '' ? [refused('recovery unnamed', at)] : [],
     ...link.windowed && sheet.drying.windows.length === 0 ? [refused('no window', { ...at, what: sheet.name })] : [],
   ]
 }

@@ -22,7 +22,10 @@ const step = z.strictObject({
   targets: list(target, 60, draftFields.targets), checks: list(check, 12, draftFields.checks),
 })
 
-const link = z.strictObject({ from: key, to: key, milestone: z.nullable(z.enum(milestoneNames, draftFields.milestone)), risk: z.enum(risks, draftFields.risk), windowed: z.boolean() })
+/** What a missed window asks for here; null: what the material's sheet says. */
+const recovery = z.strictObject({ name: words(80, draftFields.recovery), minutes: whole(1, 480, draftFields.minutes) })
+
+const link = z.strictObject({ from: key, to: key, milestone: z.nullable(z.enum(milestoneNames, draftFields.milestone)), risk: z.enum(risks, draftFields.risk), windowed: z.boolean(), recovery: z._default(z.nullable(recovery), null) })
 const face = z.strictObject({ key, name: words(40, draftFields.faceName) })
 const part = z.strictObject({ key, name: words(60, draftFields.partName), grip: z.nullable(words(40, draftFields.grip)), faces: list(face, 12, draftFields.faces) })
 

@@ -21,6 +21,7 @@ export const draftFields = {
   dust: 'Dust is none, some or much.',
   targets: 'A step works on at most 60 faces.',
   checks: 'A rest has at most 12 checks.',
+  recovery: 'The name of a recovery has at most 80 characters.',
   milestone: 'Choose what is waited for.',
   risk: 'Waits go by likely, by give-it-till or by the slowest.',
   faces: 'A part has at most 12 faces.',

@@ -40,6 +40,7 @@ const sentences: Record<ScheduleProblemCode, (said: Said) => string> = {
   'no such milestone': ({ step, other, what }) => `“${step}” waits until “${other}” is ${rung(what)}, which its material never is.`,
   'no window': ({ step, other, what }) => `“${step}” waits for a window after “${other}”, but ${what} has none.`,
   'window shuts first': ({ step, other, minutes, what }) => `“${step}” comes too late: the window after “${other}” shuts after ${waitSpan(minutes)}, before ${what === '' ? 'it may begin' : `its wait of ${waitSpan(Number(what))} and the work between are over`}.`,
+  'recovery unnamed': ({ step, other }) => `What a missed window asks for between “${other}” and “${step}” has no name.`,
   'circle': ({ steps }) => `These wait for each other in a circle: ${steps}.`,
   'apart': ({ step }) => `“${step}” leads nowhere: nothing waits for it and it waits for nothing of the rest.`,
   'no order': ({ step, other }) => `“${other}” and “${step}” are on the same face, and nothing says which comes first.`,

@@ -25,7 +25,7 @@ describe('what changed between two editions', () => {
     expect(said(copyStep(before, 'b', sheets).draft)).toEqual(['New step: Varnish, second time'])
   })
   it('names waits that were changed, and the order', () => {
-    expect(said(setLink(before, { from: 'a', to: 's', milestone: 'dry-to-sand-flat', risk: 'p90', windowed: false }))).toEqual(['What Sand waits for after Ground'])
+    expect(said(setLink(before, { from: 'a', to: 's', milestone: 'dry-to-sand-flat', risk: 'p90', windowed: false, recovery: null }))).toEqual(['What Sand waits for after Ground'])
     expect(said(moveStep(before, 's', -1, sheets))).toEqual(['The order of the steps', 'Sand waits for Ground no more', 'Varnish waits for Sand no more', 'Varnish waits for Ground now', 'Ground waits for Sand now'])
   })
   it('names parts', () => {

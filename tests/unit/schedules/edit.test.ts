@@ -45,7 +45,7 @@ describe('a step taken out, moved and copied', () => {
   })
 
   it('comes back as it was when moved there and back, changed waits and all', () => {
-    const changed = setLink(gessoed(), { from: 'one', to: 'sand', milestone: 'dry-to-sand-flat', risk: 'p98', windowed: false })
+    const changed = setLink(gessoed(), { from: 'one', to: 'sand', milestone: 'dry-to-sand-flat', risk: 'p98', windowed: false, recovery: null })
     const moved = moveStep(changed, 'two', -2, sheets)
     expect(moved.steps.map(step => step.key)).toEqual(['two', 'one', 'sand'])
     expect(linkTexts(moved)).toEqual(['one > sand: dry-to-sand-flat p98', 'two > one: ready-to-recoat p90'])
@@ -60,7 +60,7 @@ describe('a step taken out, moved and copied', () => {
 
   it('keeps a wait between unlike faces that somebody made', () => {
     const draft = panelWith({ key: 'f', kind: 'coat', with: 'acrylic-gesso', targets: on('panel.front') }, { key: 'x', kind: 'bench work', targets: on('panel.front') }, { key: 'b', kind: 'coat', with: 'acrylic-gesso', targets: on('panel.back') })
-    const tied = setLink(draft, { from: 'f', to: 'b', milestone: 'dry-to-handle', risk: 'p90', windowed: false })
+    const tied = setLink(draft, { from: 'f', to: 'b', milestone: 'dry-to-handle', risk: 'p90', windowed: false, recovery: null })
     expect(linkTexts(moveStep(tied, 'b', -1, sheets))).toContain('f > b: dry-to-handle p90')
     expect(linkTexts(removeLink(tied, 'f', 'b'))).toEqual(linkTexts(draft))
   })

@@ -9,7 +9,7 @@ import { problemText } from '#shared/words/schedule-problems'
 import { films, libraryOne, materialOf, on, panelWith, rules, sheets } from './drafts'
 
 const found = (draft: ScheduleDraft) => scheduleProblems(draft, sheets, reckonSchedule(draft, sheets, films), rules).map(problem => `${problem.kind}: ${problemText(problem, draft)}`)
-const link = (from: string, to: string) => ({ from, to, milestone: null, risk: 'p90' as const, windowed: false })
+const link = (from: string, to: string) => ({ from, to, milestone: null, risk: 'p90' as const, windowed: false, recovery: null })
 const two = (first: string, second: string) => panelWith({ key: 'a', name: 'A', kind: 'coat', with: first, targets: on('panel') }, { key: 'b', name: 'B', kind: 'coat', with: second, targets: on('panel') })
 
 describe('what cannot be in a draft', () => {
@@ -40,7 +40,7 @@ describe('what cannot be in a draft', () => {
     const short = new Map([...sheets].map(([id, sheet]) => [id, { ...sheet, drying: { ...sheet.drying, windows: sheet.drying.windows.slice(0, 1) } }]))
     const first = { wait: films.wait.bind(films), windows: (step: Parameters<typeof films.windows>[0]) => films.windows(step).slice(0, 1) }
     const codes = (draft: ScheduleDraft) => scheduleProblems(draft, short, reckonSchedule(draft, short, first), rules).map(problem => `${problem.code} ${problem.step} ${problem.other}`)
-    const draft = setLink(two('spray-enamel', 'spray-enamel'), { from: 'a', to: 'b', milestone: null, risk: 'p90', windowed: true })
+    const draft = setLink(two('spray-enamel', 'spray-enamel'), { from: 'a', to: 'b', milestone: null, risk: 'p90', windowed: true, recovery: null })
     expect(codes(draft)).toEqual([])
     const work = { ...draft, steps: [...draft.steps, { ...draft.steps[0]!, key: 'w', name: 'W', kind: 'bench work' as const, materialId: null, pieceMin: 420 }] }
     expect(codes(setLink(setLink(work, link('a', 'w')), link('w', 'b')))).toContain('window shuts first b a')
