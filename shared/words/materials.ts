@@ -43,6 +43,9 @@ export const materialWords = {
   level: 'It must lie level while it is wet.',
   gloves: (until: MilestoneName) => `Gloves until it is ${milestoneText(until)}.`,
   gloveName: 'Hands',
+  privatePart: 'private',
+  isMix: 'a mix',
+  notYours: 'Makers and owners change materials. You may read them.',
 } as const
 
 const solvents: Record<string, string> = { 'none': 'no thinner', 'water': 'water-based', 'mineral spirits': 'thinned with mineral spirits', 'turpentine': 'thinned with turpentine', 'alcohol': 'alcohol-based', 'lacquer thinner': 'thinned with lacquer thinner', 'aliphatic solvent': 'thinned with an aliphatic solvent' }

@@ -1,0 +1,162 @@
+import type { Browser, Page } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
+import { startServer } from '../helpers/server'
+import type { TestServer } from '../helpers/server'
+import { firstStudio, joinAs } from '../helpers/sign-in'
+import type { Visitor } from '../helpers/sign-in'
+
+let server: TestServer
+let browser: Browser
+let maker: Visitor
+let helper: Visitor
+
+beforeAll(async () => {
+  server = await startServer()
+  browser = await openBrowser()
+  const owner = await firstStudio(server.origin)
+  maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
+  helper = await joinAs(server.origin, owner, 'helper', 'hazel@example.test')
+})
+afterAll(async () => {
+  await browser.close()
+  await server.stop()
+})
+
+/** Counts every key that is pressed. */
+function hands(page: Page) {
+  const counted = { keys: 0 }
+  const press = async (key: string, times = 1) => {
+    for (let i = 0; i < times; i += 1) await page.keyboard.press(key)
+    counted.keys += times
+  }
+  const type = async (text: string) => {
+    await page.keyboard.type(text)
+    counted.keys += text.length
+  }
+  /** Tabs until the field of this label has the focus: what a person does who knows the form. */
+  const to = async (label: string) => {
+    for (let i = 0; i < 60; i += 1) {
+      const here = await page.evaluate(() => document.activeElement instanceof HTMLInputElement || document.activeElement instanceof HTMLSelectElement || document.activeElement instanceof HTMLTextAreaElement ? document.activeElement.labels?.[0]?.textContent ?? '' : document.activeElement?.textContent ?? '')
+      if (here.trim() === label) return
+      await press('Tab')
+    }
+    throw new Error(`The focus never came to "${label}".`)
+  }
+  return { counted, press, type, to }
+}
+
+describe('a new material from its data sheet', () => {
+  it('is typed at 390 px by keyboard alone, in few enough keys for three minutes', async () => {
+    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/materials/new')
+    expect(await axeProblems(page)).toEqual([])
+    const { counted, press, type, to } = hands(page)
+    await to('Name')
+    await type('Hall varnish')
+    await to('Kind')
+    await type('Var')
+    await to('How it hardens')
+    await type('Water')
+    const sheet: [string, string][] = [['Coverage', '10-12 m2/L'], ['VOC', '80 g/L'], ['Temperature of its times', '20'], ['Humidity of its times', '50'], ['Set to touch', '30 min'], ['Recoat, earliest', '2-4 h'], ['Recoat, latest', '24 h'], ['Full cure', '7 d'], ['Lowest temperature', '10']]
+    for (const [label, text] of sheet) {
+      await to(label)
+      await type(text)
+    }
+    await page.getByText(/^Ready to recoat: likely .+, give it till .+\.$/).waitFor()
+    await to('Keep this material')
+    await press('Enter')
+    await page.getByRole('heading', { level: 1, name: 'Hall varnish' }).waitFor()
+    // Three minutes at a slow 2 keys a second are 360 keys.
+    expect(counted.keys).toBeLessThan(360)
+    await page.getByText('data sheet of Hall varnish, “2-4 h” (read)').first().waitFor()
+    await page.getByText('not on the sheet: usual for varnish, with a wider band (a planning value of ours)').first().waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390)
+    expect(problems).toEqual([])
+  })
+
+  it('needs three answers, says which is missing, and loses nothing that was typed', async () => {
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/materials/new')
+    await page.getByLabel('Name', { exact: true }).fill('Sill paint')
+    await page.getByLabel('Recoat, earliest').fill('4')
+    await page.getByRole('button', { name: 'Keep this material' }).click()
+    await page.getByText('What it is: choose a kind, such as varnish or glue.').waitFor()
+    await page.getByText('Recoat, earliest: say min, h or d, such as 30 min or 2-4 h.').waitFor()
+    await page.reload()
+    await page.waitForFunction(() => [...document.querySelectorAll('input')].some(input => input.value === 'Sill paint'))
+    expect(await page.getByLabel('Recoat, earliest').inputValue()).toBe('4')
+    await page.getByLabel('Recoat, earliest').fill('')
+    await page.getByLabel('Kind', { exact: true }).selectOption('paint')
+    await page.getByLabel('How it hardens').selectOption('water')
+    await page.getByRole('button', { name: 'Keep this material' }).click()
+    await page.getByRole('heading', { level: 1, name: 'Sill paint' }).waitFor()
+  })
+})
+
+describe('a starter material', () => {
+  it('is made ours by typing one figure over, says what changed, and goes back', async () => {
+    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    const shellac = (await maker.get<{ id: number, name: string }[]>('/api/materials')).body.find(each => each.name === 'Shellac')?.id ?? 0
+    await visit(page, `/materials/${shellac}`)
+    await page.getByRole('link', { name: 'Make it ours' }).click()
+    await page.getByRole('heading', { level: 1, name: 'Figures of Shellac' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    const recoat = page.getByRole('group', { name: 'ready to recoat' })
+    await recoat.getByLabel('Usual').fill('1 h')
+    await page.getByRole('button', { name: 'Save as a new edition' }).click()
+    await page.getByRole('heading', { level: 1, name: 'Shellac' }).waitFor()
+    await page.getByText(/ready to recoat: 1 h.*was 45 min/).waitFor()
+    await page.getByText('the studio’s own figure (the studio’s own)').waitFor()
+    await page.getByRole('button', { name: 'Go back to edition 1' }).click()
+    await page.getByRole('button', { name: 'Go back', exact: true }).click()
+    await page.getByText('Back to edition 1').waitFor()
+    await page.getByText(/edition 3/).first().waitFor()
+    expect(problems).toEqual([])
+  })
+})
+
+describe('a mix', () => {
+  it('is made of parts, one of them private, which a helper’s page does not hold', async () => {
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    const secret = await maker.post<{ id: number }>('/api/materials', { name: 'Cellar amber', kind: 'varnish', hardening: 'oil', solvent: 'mineral spirits', contents: [], mustLieLevel: false, gloves: false, hazards: '', figures: {} })
+    expect(secret.status).toBe(200)
+    await visit(page, '/materials/mix')
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByLabel('Name', { exact: true }).fill('House varnish')
+    const part = (at: number) => page.getByRole('group', { name: `Part ${at}` })
+    await part(1).getByLabel('Material').selectOption({ label: 'Oil polyurethane' })
+    await part(1).getByLabel('Parts').fill('3')
+    await part(2).getByLabel('Material').selectOption({ label: 'Cellar amber' })
+    await part(2).getByLabel(/^Private/).check()
+    await page.getByRole('button', { name: 'Keep the mix' }).click()
+    await page.getByRole('heading', { level: 1, name: 'House varnish' }).waitFor()
+    await page.getByText('Cellar amber, 1 part').waitFor()
+    const path = new URL(page.url()).pathname
+    const other = await openPage(browser, server.origin, {}, helper)
+    await visit(other.page, path)
+    await other.page.getByText('One part is private to the makers.').waitFor()
+    expect(await other.page.content()).not.toContain('Cellar amber')
+    expect(await other.page.getByRole('link', { name: 'Change its figures' }).count()).toBe(0)
+    await visit(other.page, '/materials')
+    expect(await other.page.content()).not.toContain('Cellar amber')
+  })
+})
+
+describe('a data sheet', () => {
+  it('is added from the page, and taken away after being asked once', async () => {
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    const wax = (await maker.get<{ id: number, name: string }[]>('/api/materials')).body[0]?.id ?? 0
+    await visit(page, `/materials/${wax}`)
+    const file = (name: string, text: string) => ({ name, mimeType: 'application/pdf', buffer: Buffer.from(text) })
+    await page.getByLabel('Add a data sheet').setInputFiles(file('sheet.pdf', 'not a PDF at all'))
+    await page.getByText(/^.*What is in this file is none we know/).waitFor()
+    await page.getByLabel('Add a data sheet').setInputFiles(file('sheet.pdf', '%PDF-1.7 wax'))
+    await page.getByRole('link', { name: 'Read sheet.pdf' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByRole('button', { name: 'Take away sheet.pdf' }).click()
+    await page.getByRole('dialog').getByRole('button', { name: 'Take away' }).click()
+    await page.getByText('No data sheet is kept with this material yet.').waitFor()
+  })
+})
