@@ -71,8 +71,6 @@ export const printWords = {
   paper: 'Paper',
   papers: { a4: 'A4', letter: 'Letter', roll: '62 mm roll' },
   which: 'Which tags',
-  all: 'All',
-  none: 'None',
   carriers: 'Carriers',
   print: 'Print',
   back: 'Back',
