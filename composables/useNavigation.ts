@@ -7,6 +7,7 @@ export function useNavigation() {
   const top: NavigationLink[] = [
     { to: '/board', label: shellWords.board },
     { to: '/hands', label: shellWords.hands },
+    { to: '/pieces', label: shellWords.pieces },
     { to: '/week', label: shellWords.week },
     { to: '/schedules', label: shellWords.schedules },
     { to: '/materials', label: shellWords.materials },

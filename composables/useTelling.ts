@@ -13,18 +13,20 @@ import { groupNames } from '#shared/words/group'
 import { groupMoment } from '#shared/verdict/next'
 import { momentText } from '#shared/words/moments'
 import { actText } from '#shared/words/steps'
+import type { ActDetail } from '#shared/words/steps'
+import type { ManyPart } from '#shared/many-acts'
 import type { ToldLine } from '~/stores/told'
 import type { Told } from '~/stores/untold'
 
 type Studio = Awaited<ReturnType<typeof useStudio>>
 
 /** What a page tells: the kind, what it says, when, and words for its step or material. */
-export interface Telling { kind: TellableKind, body: ActRequest['body'], pieces: readonly PieceState[], doneAt: number, partIds?: number[], step?: string | null, material?: string | null }
+export interface Telling { kind: TellableKind, body: ActRequest['body'], pieces: readonly Pick<PieceState, 'id' | 'name' | 'version'>[], doneAt: number, partIds?: number[], step?: string | null, material?: string | null, detail?: ActDetail, bundle?: number | null }
 
-function factOf({ kind, body, step, material }: Telling): string {
+function factOf({ kind, body, step, material, detail }: Telling): string {
   const milestone = milestoneNames.find(name => name === body.milestone) ?? null
   const text = (value: unknown) => (typeof value === 'string' ? value : null)
-  return actText(kind, { step, material, milestone, reached: body.reached === true, reason: text(body.reason), air: kind === 'air' ? body.kind as 'sun' : null })
+  return actText(kind, { step, material, milestone, reached: body.reached === true, reason: text(body.reason), air: kind === 'air' ? body.kind as 'sun' : null, ...detail })
 }
 
 const problemOf = (error: unknown) => (error instanceof FetchError && typeof error.data?.data?.message === 'string' ? error.data.data.message as string : toldWords.notReached)
@@ -67,7 +69,7 @@ function fellowsMoved(kind: TellableKind, before: StudioState | null, after: Stu
 }
 
 /** What a line on the page keeps of a telling, whatever came of it. */
-const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
+const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, detail: telling.detail ?? {}, bundle: telling.bundle ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
 
 /** Solvent work that waits for its three answers: nothing of it is recorded before. */
 function waitingWork() {
@@ -84,9 +86,43 @@ function waitingWork() {
   return { asked, wait, takeWaiting }
 }
 
+/** The three answers, for everything that waited for them. */
+async function answerAll(waiting: readonly { telling: Telling }[], current: (ids: readonly number[]) => PieceState[], say: (telling: Telling, vapour: VapourAnswers) => Promise<unknown>, vapour: VapourAnswers) {
+  for (const { telling } of waiting) await say({ ...telling, pieces: current(telling.pieces.map(piece => piece.id)) }, vapour)
+}
+
+/** The most pieces one act speaks of. */
+const mostPieces = 200
+
+/** Several acts in one go, undone in one go; each on as many pieces as one act may speak of, with the versions that the one before has left. */
+function inOneGo(told: ReturnType<typeof useToldStore>, current: (ids: readonly number[]) => PieceState[], say: (telling: Telling) => Promise<unknown>) {
+  return async (parts: readonly ManyPart[], doneAt: number, detail: ActDetail = {}) => {
+    const bundle = told.newBundle()
+    for (const part of parts) {
+      for (let from = 0; from < part.pieceIds.length; from += mostPieces) {
+        const pieces = current(part.pieceIds.slice(from, from + mostPieces))
+        const own = new Set(pieces.flatMap(piece => piece.groups.flatMap(group => group.parts.map(each => each.partId))))
+        if (pieces.length > 0) await say({ ...part, pieces, partIds: part.partIds?.filter(id => own.has(id)), doneAt, detail, bundle })
+      }
+    }
+  }
+}
+
+/** Takes back a line, and all that was told in one go with it, the last first. */
+function undoing(told: ReturnType<typeof useToldStore>, takeBack: (line: ToldLine) => Promise<unknown>, dropLater: (line: ToldLine) => void) {
+  return async (line: ToldLine) => {
+    const all = line.bundle === null ? [line] : told.lines.filter(each => each.bundle === line.bundle)
+    for (const each of all.toReversed()) {
+      if (each.state === 'told') await takeBack(each)
+      else if (each.state === 'later') dropLater(each)
+    }
+  }
+}
+
 function makeTelling(studio: Studio) {
   const { tell, correct, busy } = useActs()
   const told = useToldStore()
+  const dropLater = lateTaps(told)
   const current = (ids: readonly number[]) => (studio.state.value?.pieces ?? []).filter(piece => ids.includes(piece.id))
   const effectNow = (line: EffectOf & Pick<ToldLine, 'pieceIds'>) => effectOfAct(current(line.pieceIds), line)
 
@@ -111,11 +147,6 @@ function makeTelling(studio: Studio) {
     return told.add({ ...blank, state: 'told', actId: answer.actId, rootId: answer.actId, effect: [effect, fellowsMoved(telling.kind, stood, studio.state.value, blank.pieceIds)].filter(Boolean).join(' '), before: now })
   }
 
-  /** The three answers, for everything that waits for them. */
-  async function answer(vapour: VapourAnswers) {
-    for (const { telling } of takeWaiting()) await say({ ...telling, pieces: current(telling.pieces.map(piece => piece.id)) }, vapour)
-  }
-
   async function amend(line: ToldLine, change: { doneAt?: number, takeBack?: boolean }) {
     if (line.actId === null || busy.value) return
     busy.value = true
@@ -137,10 +168,10 @@ function makeTelling(studio: Studio) {
   /** After somebody else was first: the same tap on the pieces as they stand now. */
   async function again(line: ToldLine) {
     told.putAway(line.key)
-    await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material })
+    await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material, detail: line.detail })
   }
 
-  return { say, again, dropLater: lateTaps(told), busy, told, asked, answer, leave: () => void takeWaiting(), undo: (line: ToldLine) => amend(line, { takeBack: true }), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
+  return { say, sayAll: inOneGo(told, current, say), again, dropLater, busy, told, asked, answer: (vapour: VapourAnswers) => answerAll(takeWaiting(), current, say, vapour), leave: () => void takeWaiting(), undo: undoing(told, line => amend(line, { takeBack: true }), dropLater), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }
 }
 
 type TellingOnPage = ReturnType<typeof makeTelling> & { studio: Studio }

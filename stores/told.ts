@@ -1,5 +1,6 @@
 import { defineStore } from 'pinia'
 import type { Effect } from '#shared/words/hands'
+import type { ActDetail } from '#shared/words/steps'
 import type { TellableKind, ActRequest } from '#shared/schemas/act'
 
 /** One tap and what came of it, kept on the page until somebody has read it. */
@@ -14,6 +15,10 @@ export interface ToldLine {
   /** "coat on: second varnish" and the pieces' names, in words. */
   fact: string
   names: string
+  /** More of what the fact was about, such as the place. */
+  detail: ActDetail
+  /** What was told in one go has one number, and is undone in one go. */
+  bundle: number | null
   doneAt: number
   state: 'told' | 'later' | 'refused' | 'undone'
   /** The key it waits under on this device while it is not told. */
@@ -35,7 +40,8 @@ export const useToldStore = defineStore('told', () => {
 
   function add(line: Omit<ToldLine, 'key'>): ToldLine {
     const added = { ...line, key: ++last }
-    lines.value = [...lines.value.slice(-9), added]
+    const kept = lines.value.filter((each, index, all) => index >= all.length - 9 || (line.bundle !== null && each.bundle === line.bundle))
+    lines.value = [...kept, added]
     return added
   }
 
@@ -43,7 +49,14 @@ export const useToldStore = defineStore('told', () => {
     lines.value = lines.value.map(each => (each.key === key ? { ...each, ...changes } : each))
   }
 
-  const putAway = (key: number) => { lines.value = lines.value.filter(each => each.key !== key) }
+  /** Puts a line away, with all that was told in one go with it. */
+  function putAway(key: number) {
+    const bundle = lines.value.find(each => each.key === key)?.bundle ?? null
+    lines.value = lines.value.filter(each => each.key !== key && (bundle === null || each.bundle !== bundle))
+  }
 
-  return { lines, add, change, putAway }
+  let bundles = 0
+  const newBundle = () => ++bundles
+
+  return { lines, newBundle, add, change, putAway }
 })

@@ -3,6 +3,7 @@ import { batch, coat, coatTarget, face, finishingSchedule, intake, material, mat
 import { cautionsOf } from '~~/server/services/cautions'
 import { intakeCautions } from '~~/server/services/intake-cautions'
 import { pieceHistory } from '~~/server/services/piece-history'
+import { namesBefore } from '~~/server/services/piece-renames'
 import { pieceSteps } from '~~/server/services/piece-steps'
 import { ratesOf } from '~~/server/services/rates'
 import type { Membership } from '~~/server/services/sessions'
@@ -23,7 +24,7 @@ export function findPiece(db: Database, studioId: number, reader: Membership, pi
   const { branch } = folded.folded
   const intakes = db.select({ question: intake.question, answer: intake.answer }).from(intake).where(scoped(intake, studioId, eq(intake.pieceId, pieceId))).all()
   return {
-    at: now, id: head.piece.id, name: head.piece.name, version: head.piece.version, goneAt: head.piece.goneAt, batch: { id: head.batch.id, name: head.batch.name }, schedule: head.schedule,
+    at: now, id: head.piece.id, name: head.piece.name, version: head.piece.version, goneAt: head.piece.goneAt, goneHow: head.piece.goneHow, names: namesBefore(db, studioId, pieceId), batch: { id: head.batch.id, name: head.batch.name }, schedule: head.schedule,
     order: head.order && { name: head.order.name, dueAt: head.order.dueAt, promisedAt: head.order.promisedAt },
     mates: db.select({ id: piece.id, name: piece.name }).from(piece).where(scoped(piece, studioId, eq(piece.batchId, head.batch.id), isNull(piece.goneAt))).orderBy(asc(piece.ordinal)).all(),
     branch: branch && { fromStep: folded.folded.steps.find(step => step.key === branch.fromStep)?.name ?? '', sinceAt: folded.acts.find(each => each.rootId === branch.actId)?.doneAt ?? now, rejoined: branch.rejoinedActId !== null },

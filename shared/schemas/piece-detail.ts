@@ -1,6 +1,6 @@
 import type { RateWire } from '#shared/schemas/rate'
 import type { CautionWire } from '#shared/schemas/schedule'
-import type { ActKind, Actor, DoubtCause, Hold, IntakeQuestion, StepKind, StepOrigin, StepStatus } from '#shared/terms'
+import type { ActKind, Actor, DoubtCause, GoneWay, Hold, IntakeQuestion, StepKind, StepOrigin, StepStatus } from '#shared/terms'
 import type { ActDetail } from '#shared/words/steps'
 import type { ProblemCode } from '#shared/work/types'
 
@@ -29,6 +29,9 @@ export interface StepLine {
   /** The act that put it in, for a recovery, a branch or a coat that no schedule asked for. */
   because: { kind: ActKind, doneAt: number, by: string | null } | null
 }
+
+/** What the piece was called before, who changed it and when (ms UTC). */
+export interface NameLine { was: string, at: number, by: string | null }
 
 /** How an act read before it was corrected. */
 export interface ActBefore { doneAt: number, toldAt: number, by: string | null, here: boolean, detail: ActDetail }
@@ -72,6 +75,9 @@ export interface PieceDetail {
   name: string
   version: number
   goneAt: number | null
+  goneHow: GoneWay | null
+  /** What it was called before, the last name first. */
+  names: NameLine[]
   batch: { id: number, name: string }
   schedule: string | null
   order: { name: string, dueAt: number | null, promisedAt: number | null } | null

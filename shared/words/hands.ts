@@ -165,6 +165,7 @@ export function fellowsText(count: number, mostMs: number): string {
 export const toldWords = {
   label: 'Told',
   at: (fact: string, names: string, time: string) => `${asSentence(fact)} ${names}, ${time}.`,
+  together: (facts: readonly string[], names: string, time: string, undone: boolean) => (undone ? `Taken back: ${listText([...new Set(facts)])}. ${names}.` : `${asSentence(listText([...new Set(facts)]))} ${names}, ${time}.`),
   undo: 'Undo',
   another: 'Another time',
   move: 'Move it',

@@ -1,9 +1,10 @@
 import type { MilestonePrediction, ReasonCode } from '#shared/drying/types'
-import type { ActLine, StepLine } from '#shared/schemas/piece-detail'
+import type { GoneWay } from '#shared/terms'
+import type { ActLine, NameLine, StepLine } from '#shared/schemas/piece-detail'
 import { clockTime, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { actRefusals } from '#shared/words/acts'
-import { actText, lowerFirst } from '#shared/words/steps'
+import { actText, goneTexts, lowerFirst } from '#shared/words/steps'
 import { asSentence, predictionReason } from '#shared/words/verdict'
 import type { ProblemCode } from '#shared/work/types'
 
@@ -71,8 +72,11 @@ export const pieceWords = {
   makersAnswer: 'A maker answers this.',
 } as const
 
-/** "Gone out Tue 9:00." for a piece that has left. */
-export const goneText = (at: number, clock: Clock) => `Gone out ${clockTime(at, clock)}.`
+/** "Sold Tue 9:00." for a piece that has left. */
+export const goneText = (at: number, how: GoneWay | null, clock: Clock) => asSentence(`${how === null ? 'gone out' : goneTexts[how]} ${clockTime(at, clock)}`)
+
+/** "Called Box 3 until Tue 9:00, Moss." */
+export const nameBefore = ({ was, at, by }: NameLine, clock: Clock) => `Called ${was} until ${[clockTime(at, clock), by ?? ''].filter(Boolean).join(', ')}.`
 
 const whyUnsure = (reason: ReasonCode | null) => (reason === null ? 'too unsure to promise' : predictionReason(reason))
 

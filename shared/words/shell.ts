@@ -7,6 +7,7 @@ export const shellWords = {
   main: 'Main',
   more: 'More',
   board: 'Board',
+  pieces: 'Pieces',
   hands: 'Hands',
   week: 'Week',
   schedules: 'Finishing schedules',

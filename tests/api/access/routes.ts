@@ -141,6 +141,10 @@ export const routes: Record<string, RouteCase> = {
   'calls/quiet.put.ts': { least: 'helper', apart: 'none', body: () => ({ quiet: { fromMin: 1260, toMin: 420 } }) },
   'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
 
+  'pieces/marks.get.ts': { least: 'helper', apart: 'view' },
+  'pieces/gone.get.ts': { least: 'helper', apart: 'view' },
+  'pieces/[id].patch.ts': { least: 'maker', apart: 'row', at: 'piece', body: () => ({ name: 'Elsewhere 1' }) },
+  'batches/[id].patch.ts': { least: 'maker', apart: 'row', at: 'batch', body: () => ({ name: 'Elsewhere' }) },
   'pieces/[id].get.ts': { least: 'helper', apart: 'row', at: 'piece' },
   'schedules/index.get.ts': { least: 'helper', apart: 'view' },
   'schedules/[id].get.ts': { least: 'helper', apart: 'row', at: 'schedule' },
