@@ -24,7 +24,7 @@ export default defineNuxtConfig({
   },
   security,
   // Files are counted while they come in (server/utils/upload.ts), each kind against its own limit, and refused in a sentence.
-  routeRules: { '/api/attachments/**': { security: { requestSizeLimiter: false } } },
+  routeRules: { '/api/attachments/**': { security: { requestSizeLimiter: false } }, '/api/photos/pieces/**': { security: { requestSizeLimiter: false } } },
   nitro: {
     compressPublicAssets: true,
     imports: { autoImport: false },

@@ -63,6 +63,10 @@ export type ActKind = typeof actKinds[number]
 export const goneWays = ['sold', 'given away', 'lost', 'discarded'] as const
 export type GoneWay = typeof goneWays[number]
 
+/** When in a step's life a photograph was taken. */
+export const photoMoments = ['before', 'after'] as const
+export type PhotoMoment = typeof photoMoments[number]
+
 export const callKinds = ['last moment to start', 'ready', 'before you leave', 'check the room', 'promise slipping', 'rags', 'vapour'] as const
 export type CallKind = typeof callKinds[number]
 

@@ -3,7 +3,6 @@ import { check, index, integer, sqliteTable, text, unique } from 'drizzle-orm/sq
 import { actKinds, actors } from '#shared/terms'
 import type { ActKind, Actor } from '#shared/terms'
 import { flag, id, instant, oneOf, studioKey, within } from './columns'
-import { materialVersion } from './materials'
 import { member, studioColumn } from './studio'
 
 /**
@@ -30,19 +29,4 @@ export const act = sqliteTable('act', {
   oneOf('act_kind', t.kind, actKinds), oneOf('act_actor', t.actor, actors),
   check('act_member', sql`(${t.actor} = 'member') = (${t.memberId} is not null)`),
   index('act_told').on(t.studioId, t.toldAt),
-])
-
-export const attachment = sqliteTable('attachment', {
-  id: id(),
-  studioId: studioColumn(),
-  actId: integer('act_id'),
-  materialVersionId: integer('material_version_id'),
-  kind: text('kind').$type<'photo' | 'data sheet'>().notNull(),
-  sha256: text('sha256').notNull(),
-  bytes: integer('bytes').notNull(),
-  name: text('name'),
-  addedAt: instant('added_at'),
-}, t => [
-  studioKey(t), within(t, t.actId, act), within(t, t.materialVersionId, materialVersion), oneOf('attachment_kind', t.kind, ['photo', 'data sheet']),
-  check('attachment_bytes', sql`${t.bytes} > 0`), check('attachment_of_one', sql`(${t.actId} is null) <> (${t.materialVersionId} is null)`),
 ])

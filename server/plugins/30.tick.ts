@@ -4,6 +4,7 @@ import { releaseHolds } from '~~/server/reminders/claim'
 import { openChannels } from '~~/server/reminders/channels'
 import { tick } from '~~/server/reminders/tick'
 import { reconcileAll } from '~~/server/reminders/wanted'
+import { forgetPhotos } from '~~/server/services/photos'
 import { change } from '~~/server/utils/change'
 import { useConfig } from '~~/server/utils/config'
 import { useDatabase } from '~~/server/utils/database'
@@ -14,6 +15,7 @@ async function lookRound() {
   const now = Date.now()
   reconcileAll(db, now)
   const studios = await tick(db, now, openChannels(db, useConfig()))
+  await forgetPhotos(db, useConfig().storageFolder, now)
   // Open pages show the calls too.
   for (const studioId of studios) change(db, studioId, 'calls', () => undefined)
 }

@@ -12,12 +12,12 @@ import { fileRefusals } from '#shared/words/files'
 
 type AttachmentRow = typeof attachment.$inferSelect
 
-/** What a file hangs on: an act (a photograph) or an edition of a material (its data sheet). */
-export type AttachedTo = { kind: 'photo', actId: number } | { kind: 'data sheet', materialVersionId: number }
+/** What a file hangs on: a photograph, in one of its two sizes, or an edition of a material (its data sheet). */
+export type AttachedTo = { kind: 'photo' | 'thumbnail', photoId: number } | { kind: 'data sheet', materialVersionId: number }
 
 /** Notes a kept file, inside the transaction of the change it belongs to. @param name what its owner calls it, without a path */
 export function attach(tx: Transaction, studioId: number, to: AttachedTo, file: KeptFile, name: string | null, now: number): number {
-  const at = to.kind === 'photo' ? { actId: to.actId } : { materialVersionId: to.materialVersionId }
+  const at = to.kind === 'data sheet' ? { materialVersionId: to.materialVersionId } : { photoId: to.photoId }
   return tx.insert(attachment).values({ studioId, kind: to.kind, ...at, ...file, name, addedAt: now }).returning({ id: attachment.id }).get().id
 }
 
@@ -78,7 +78,7 @@ export async function keepAttached<T>(db: Database, folder: string, studioId: nu
 }
 
 /**
- * Takes a file off the disk once no row of its studio names it any more: the same picture may hang on two acts. Call it after the change
+ * Takes a file off the disk once no row of its studio names it any more: the same picture may be added twice. Call it after the change
  * that took the row away.
  */
 export async function dropUnused(db: Database, folder: string, studioId: number, sha256: string): Promise<void> {

@@ -3,6 +3,7 @@ import { batch, coat, coatTarget, face, finishingSchedule, intake, material, mat
 import { cautionsOf } from '~~/server/services/cautions'
 import { intakeCautions } from '~~/server/services/intake-cautions'
 import { pieceHistory } from '~~/server/services/piece-history'
+import { photosOf } from '~~/server/services/photos'
 import { namesBefore } from '~~/server/services/piece-renames'
 import { pieceSteps } from '~~/server/services/piece-steps'
 import { ratesOf } from '~~/server/services/rates'
@@ -29,6 +30,7 @@ export function findPiece(db: Database, studioId: number, reader: Membership, pi
     mates: db.select({ id: piece.id, name: piece.name }).from(piece).where(scoped(piece, studioId, eq(piece.batchId, head.batch.id), isNull(piece.goneAt))).orderBy(asc(piece.ordinal)).all(),
     branch: branch && { fromStep: folded.folded.steps.find(step => step.key === branch.fromStep)?.name ?? '', sinceAt: folded.acts.find(each => each.rootId === branch.actId)?.doneAt ?? now, rejoined: branch.rejoinedActId !== null },
     faceNames: readFaceNames(db, studioId, folded), layers: readLayers(db, studioId, pieceId),
+    photos: photosOf(db, studioId, reader, pieceId, new Map(folded.folded.steps.map(step => [step.key, step.name]))),
     steps: pieceSteps(db, studioId, folded), history: pieceHistory(db, studioId, folded, reader, now),
     films: readReasons(db, studioId, pieceId, now), cautions: readCautions(db, studioId, pieceId, intakes), intakes,
   }

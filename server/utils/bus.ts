@@ -1,5 +1,5 @@
 /** What a committed change touched, so that a listener can let others' business pass. */
-export type ChangeKind = 'work' | 'air' | 'places' | 'hours' | 'people' | 'settings' | 'library' | 'prediction' | 'plan' | 'calls'
+export type ChangeKind = 'work' | 'air' | 'places' | 'hours' | 'people' | 'settings' | 'library' | 'prediction' | 'plan' | 'calls' | 'photos'
 
 export interface Change {
   studioId: number

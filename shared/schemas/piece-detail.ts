@@ -1,3 +1,4 @@
+import type { PhotoLine } from '#shared/schemas/photo'
 import type { RateWire } from '#shared/schemas/rate'
 import type { CautionWire } from '#shared/schemas/schedule'
 import type { ActKind, Actor, DoubtCause, GoneWay, Hold, IntakeQuestion, StepKind, StepOrigin, StepStatus } from '#shared/terms'
@@ -78,6 +79,7 @@ export interface PieceDetail {
   goneHow: GoneWay | null
   /** What it was called before, the last name first. */
   names: NameLine[]
+  photos: PhotoLine[]
   batch: { id: number, name: string }
   schedule: string | null
   order: { name: string, dueAt: number | null, promisedAt: number | null } | null

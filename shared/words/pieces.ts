@@ -34,7 +34,6 @@ export const piecesWords = {
   noneGoneSays: 'What is sold, given away, lost or discarded stands here, and can come back.',
   moreGone: 'Show earlier ones',
   goneFailed: 'Those that are gone could not be read.',
-  failed: 'The studio cannot be reached, and nothing of it is known here yet.',
   loading: 'Fetching the pieces',
   stale: 'The studio cannot be reached. These are the pieces as last heard.',
   choose: (name: string) => `Choose ${name}`,

@@ -145,6 +145,14 @@ export const routes: Record<string, RouteCase> = {
   'pieces/gone.get.ts': { least: 'helper', apart: 'view' },
   'pieces/[id].patch.ts': { least: 'maker', apart: 'row', at: 'piece', body: () => ({ name: 'Elsewhere 1' }) },
   'batches/[id].patch.ts': { least: 'maker', apart: 'row', at: 'batch', body: () => ({ name: 'Elsewhere' }) },
+  // The body is no picture: who may is told so.
+  'photos/pieces/[id].post.ts': { least: 'helper', apart: 'row', at: 'piece', asLeast: 400, body: () => ({}) },
+  'photos/[id]/index.get.ts': { least: 'helper', apart: 'row', at: 'photo' },
+  'photos/[id]/small.get.ts': { least: 'helper', apart: 'row', at: 'photo' },
+  // An owner took it.
+  'photos/[id]/index.patch.ts': { least: 'helper', apart: 'row', at: 'photo', asLeast: 403, body: () => ({ caption: 'Elsewhere' }) },
+  'photos/[id]/index.delete.ts': { least: 'helper', apart: 'row', at: 'photo', asLeast: 403 },
+  'photos/[id]/back.post.ts': { least: 'helper', apart: 'row', at: 'photo', asLeast: 403 },
   'pieces/[id].get.ts': { least: 'helper', apart: 'row', at: 'piece' },
   'schedules/index.get.ts': { least: 'helper', apart: 'view' },
   'schedules/[id].get.ts': { least: 'helper', apart: 'row', at: 'schedule' },

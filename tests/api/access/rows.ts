@@ -1,5 +1,6 @@
 import { createECDH, randomBytes } from 'node:crypto'
 import Sqlite from 'better-sqlite3'
+import { plainPicture } from '../../helpers/pictures'
 import { joinAs, visitor } from '../../helpers/sign-in'
 import type { Visitor } from '../../helpers/sign-in'
 
@@ -7,7 +8,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, witness: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, photo: number, witness: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -48,6 +49,13 @@ function writeCalls(file: string, room: number, act: number, piece: number) {
   return { ragDuty, reminder, coat, witness }
 }
 
+/** A photograph of a piece, in a caption that names the studio. */
+async function sendPhoto(owner: Visitor, piece: number) {
+  const answer = await owner.post<{ photoId: number }>(`/api/photos/pieces/${piece}?clientKey=access-photo&caption=${marker}`, await plainPicture())
+  if (answer.status !== 200) throw new Error(`The photograph was answered with ${answer.status}: ${JSON.stringify(answer.body)}`)
+  return answer.body.photoId
+}
+
 /** A turn of a batch with a schedule, and a pin that nobody's request can make without a plan. */
 function writePin(file: string, batchId: number) {
   const db = new Sqlite(file)
@@ -76,6 +84,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const [piece = 0] = batch.body.pieceIds
   const seen = await owner.post<{ actId: number }>('/api/acts', { clientKey: 'access-first-act', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece, version: versionOf(databaseFile, piece) }], body: {} })
   if (seen.status !== 200) throw new Error(`The act was answered with ${seen.status}: ${JSON.stringify(seen.body)}`)
+  const photo = await sendPhoto(owner, piece)
   const reading = await made(owner, `/api/rooms/${room.id}/readings`, { clientKey: 'access-reading', at: now(), tempC: 19, rh: 0.5, words: null })
   const imported = await owner.post<{ importId: number }>(`/api/rooms/${room.id}/imports`, { clientKey: 'access-import', fileName: `${marker}.csv`, times: [Date.now() - 7_200_000], temps: [18], humidities: [0.5] })
   if (imported.status !== 200) throw new Error(`The file was answered with ${imported.status}: ${JSON.stringify(imported.body)}`)
@@ -92,7 +101,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const planned = await owner.post<{ batchId: number }>('/api/batches', { clientKey: 'access-planned-batch', name: `${marker} bowls`, scheduleId: schedule.id, pieces: [`${marker} bowl`], placeId: place.id, order: null, startsAt: now() })
   const pinned = writePin(databaseFile, planned.body.batchId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, carrier: carrier.id, tagCode: carriers.body[0]?.code ?? '', rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, photo, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, carrier: carrier.id, tagCode: carriers.body[0]?.code ?? '', rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */
