@@ -38,7 +38,7 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
     const inForce = !last.voided && here(last).length > 0
     return [{
       actId: last.id, rootId: first.id, kind: last.kind, doneAt: doneAt(shown), actDoneAt: last.doneAt, toldAt: first.toldAt, correctedAt: last === first ? null : last.toldAt,
-      actor: first.actor, by: nameOf(first), correctedBy: last === first ? null : nameOf(last), detail: details(shown),
+      actor: first.actor, by: nameOf(first), correctedBy: last === first ? null : nameOf(last), detail: details(shown), placeId: (shown.kind === 'moved' || shown.kind === 'back') && typeof shown.body.placeId === 'number' ? shown.body.placeId : null,
       pieceIds: [...new Set(subjects.filter(each => each.actId === last.id).map(each => each.pieceId))],
       inForce, takenBack: last.voided, problem: inForce ? problems.get(first.id) ?? null : null,
       // Taking back repeats the act it takes back, so that one is not a second reading of it.

@@ -54,6 +54,8 @@ export interface ActLine {
   by: string | null
   correctedBy: string | null
   detail: ActDetail
+  /** Where it says they went, for an act that says nothing else. */
+  placeId: number | null
   /** All the pieces it is about. */
   pieceIds: number[]
   /** In force on this piece: neither taken back nor moved to others. */
