@@ -29,6 +29,8 @@ export const pieceWords = {
   order: 'Order',
   place: 'Stands',
   mates: 'Of the same batch',
+  whole: 'Move, rename, gone',
+  amongGone: 'Among those that are gone',
   nowhere: 'nobody has said where',
   steps: 'Steps',
   due: 'due',
