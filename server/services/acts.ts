@@ -3,7 +3,7 @@ import { act, carrier, materialVersion, part, piece, pieceStep, place, stepTarge
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
-import { mayHandle } from '~~/server/services/handling'
+import { heldPiece } from '~~/server/services/handling'
 import { refuseByCaution } from '~~/server/services/act-cautions'
 import { makeBatch, refuseRegroup } from '~~/server/services/regroup'
 import { hiddenFrom } from '~~/server/services/private-materials'
@@ -126,8 +126,8 @@ function checkTeller(tx: Transaction, studioId: number, teller: Teller, kind: Te
   if (kind === 'touch test') return may(role, 'record touch tests') ? null : notAllowed()
   if (makerKinds.includes(kind)) return may(role, 'start batches') ? null : notAllowed()
   if (kind === 'moved' && role === 'helper') {
-    const held = pieces.find(each => !mayHandle(tx, studioId, each.id, now))
-    return held ? notAllowed(actRefusals.mayNotMove(held.name)) : null
+    const held = heldPiece(tx, studioId, pieces.map(each => each.id), now)
+    return held === null ? null : notAllowed(actRefusals.mayNotMove(held))
   }
   if (!workKinds.includes(kind)) return may(role, 'move pieces') ? null : notAllowed()
   const wanted = kindOfStep(tx, studioId, kind, body, pieces)

@@ -4,11 +4,12 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import { pieceFacts } from '#shared/verdict/facts'
 import { groupVerdict, pieceVerdict } from '#shared/verdict/verdict'
 
-/** Whether the verdict on a piece lets a helper take it up: by a grip or at all. */
-export function mayHandle(db: Database | Transaction, studioId: number, pieceId: number, now: number): boolean {
-  const [state] = pieceStates(db, studioId, [pieceId])
-  if (!state) return false
+/** The name of a piece that its verdict does not let a helper take up, by a grip or at all; null when all may be taken. `now` in ms UTC. */
+export function heldPiece(db: Database | Transaction, studioId: number, pieceIds: readonly number[], now: number): string | null {
   const where = { rooms: roomStates(db, studioId, now), places: placeStates(db, studioId) }
-  const kind = groupVerdict(pieceFacts(state, where).map(parts => pieceVerdict(parts, now, null)))?.kind
-  return kind === 'may be handled' || kind === 'hold by'
+  const held = pieceStates(db, studioId, pieceIds).find((state) => {
+    const kind = groupVerdict(pieceFacts(state, where).map(parts => pieceVerdict(parts, now, null)))?.kind
+    return kind !== 'may be handled' && kind !== 'hold by'
+  })
+  return held?.name ?? null
 }
