@@ -61,6 +61,9 @@ export function recordAct(db: Database, studioId: number, teller: Teller, reques
     const folded = refold(tx, studioId, pieces.map(each => each.id))
     const problem = folded.flatMap(each => each.folded.problems).find(each => each.actId === actId)
     if (problem) return impossible(problemSentence(problem.why))
+    // What it brings back with it is known once it is here again: a wet film stays out of a room that somebody sleeps in.
+    const caution = request.kind === 'back' ? refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now) : null
+    if (caution) return caution
     const { memberId } = actingOf(teller)
     noteStart(tx, studioId, memberId, request, body, actId, now)
     afterAct(tx, studioId, { actId, kind: request.kind, body, pieceIds: pieces.map(each => each.id), memberId, doneAt: Date.parse(request.doneAt), now })

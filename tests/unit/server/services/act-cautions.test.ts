@@ -1,6 +1,6 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { act, keepOut, pieceStep, ragDuty, reading, room, stay, vapourStart } from '~~/db/schema'
+import { act, keepOut, piece, pieceStep, ragDuty, reading, room, stay, vapourStart } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import type { Teller } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
@@ -45,6 +45,18 @@ function workshop(given: { schedule?: string, oldObject?: boolean, place?: 'boot
   const of = (material: string) => ({ step: null, materialVersionId: studio.materialOf(material) })
   return { ...studio, ids, start, tell, made, correct, of }
 }
+
+describe('a piece that comes back', () => {
+  it('brings no wet solvent film into a room that somebody sleeps in', () => {
+    const { db, studioId, members, ids: [one = 0], made, of, rooms, places } = workshop()
+    made('coat on', one, of('nitrocellulose-lacquer'), { vapour: running })
+    made('gone', one, {})
+    db.update(room).set({ sleptIn: true }).where(eq(room.id, rooms.bench)).run()
+    const back = (placeId: number) => recordAct(db, studioId, { member: members.maker }, { clientKey: `back-to-${placeId}`, kind: 'back', doneAt: iso(now), pieces: [{ id: one, version: db.select({ version: piece.version }).from(piece).where(eq(piece.id, one)).get()?.version ?? 0 }], body: { placeId } }, now)
+    expect(back(places.shelf)).toMatchObject({ ok: false, message: startVapour.sleptIn('Bench') })
+    expect(back(places.booth)).toMatchObject({ ok: true })
+  })
+})
 
 describe('a correction', () => {
   it('puts no wet solvent film into a room that somebody sleeps in, nor solvent work done there', () => {
