@@ -77,13 +77,15 @@ export const piecesWords = {
   cancelSays: 'Every step that has not begun is left out. What was done stays in the history.',
   cancelWet: (count: number) => (count === 1 ? 'One of them is wet or held: it stays where it stands, with its verdict, until it is dry.' : `${count} of them are wet or held: they stay where they stand, with their verdicts, until they are dry.`),
   cancelDry: 'Then say of each what became of it: gone, or kept.',
-  cancelAct: 'Cancel them',
+  cancelAct: 'Cancel what is left',
   reason: 'Why, if you like',
   rename: 'Rename',
   renameHint: 'One piece, or the batch of the chosen.',
   renameTitle: 'Rename',
   renamePiece: 'The piece',
   renameBatch: 'The batch',
+  nameOfPiece: 'Name of the piece',
+  nameOfBatch: 'Name of the batch',
   renameAct: 'Rename',
   renamed: (was: string, name: string) => `${was} is called ${name} now.`,
   undo: 'Undo',
@@ -106,12 +108,6 @@ export function countText(shown: number, all: number): string {
 export function freeText({ capacity, taken }: Pick<PlaceState, 'capacity' | 'taken'>): string {
   const free = capacity - taken
   return free <= 0 ? 'full' : `${free} of ${capacity} free`
-}
-
-/** "3 of 12 free: one too few", for a place that the chosen do not fit on. */
-export function tightText(place: Pick<PlaceState, 'capacity' | 'taken'>, wanted: number): string {
-  const short = wanted - Math.max(0, place.capacity - place.taken)
-  return short <= 0 ? freeText(place) : `${freeText(place)}, ${short} too many`
 }
 
 /** "Sold Tue 9:00", as a line about a piece that has left. */
