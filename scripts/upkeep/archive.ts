@@ -60,7 +60,7 @@ export async function makeArchive({ databaseFile, storageFolder }: Places, folde
 }
 
 /** Whether a server has the database open: nobody else may have it while it is exchanged. */
-function isOpen(databaseFile: string): boolean {
+export function isOpen(databaseFile: string): boolean {
   const client = new Sqlite(databaseFile, { timeout: 0 })
   try {
     client.pragma('locking_mode = EXCLUSIVE')

@@ -179,7 +179,7 @@ describe('an empty studio', () => {
       const first = await firstStudio(empty.origin)
       const { page } = await openPage(browser, empty.origin, {}, first)
       await visit(page, '/board')
-      await page.getByRole('main').getByRole('link', { name: 'Set up rooms and places' }).waitFor()
+      await page.getByRole('main').getByRole('link', { name: 'Add a room' }).waitFor()
       await first.post('/api/rooms', { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
       await page.getByRole('main').getByRole('link', { name: 'Start a batch' }).waitFor()
       await visit(page, '/sheet')
