@@ -1,6 +1,7 @@
 import { choicesOf, withChoice } from '#shared/sentence/card'
 import { readSentence } from '#shared/sentence/read'
 import type { Sentence } from '#shared/sentence/read'
+import { rungFor } from '#shared/sentence/rung'
 import { answeredAt } from '#shared/time'
 import type { TimeAnswer } from '#shared/time'
 import { controlWords } from '#shared/words/controls'
@@ -25,12 +26,15 @@ function useCard(putOn: PutOn, mayPut: Ref<boolean>) {
   const chosenId = ref<number | null>(null)
   const when = ref<TimeAnswer | null>(null)
   const choices = computed(() => (sentence.value ? choicesOf(sentence.value, vocabulary.value.rooms) : []))
-  const settled = computed(() => sentence.value && withChoice(sentence.value, choices.value.find(each => each.id === chosenId.value) ?? null))
   const reads = computed(() => {
     const ids = sentence.value && 'pieceIds' in sentence.value ? sentence.value.pieceIds : []
     return studio.pieces.value.filter(({ piece }) => ids.includes(piece.id))
   })
   const meant = computed(() => reads.value.filter(({ piece }) => !left.value.includes(piece.id)).map(({ piece }) => piece))
+  const settled = computed((): Sentence | null => {
+    const said = sentence.value && withChoice(sentence.value, choices.value.find(each => each.id === chosenId.value) ?? null)
+    return said?.kind === 'touch test' ? { ...said, milestone: rungFor(said.milestone, meant.value.flatMap(piece => piece.groups.flatMap(group => group.films))) } : said
+  })
   const says = computed(() => settled.value && understoodText(settled.value, meant.value.map(piece => piece.name), units.value))
   const wanted = computed(() => settled.value && wantedText(settled.value, meant.value.length, mayPut.value))
 

@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { readSentence } from '#shared/sentence/read'
 import type { Sentence, Vocabulary } from '#shared/sentence/read'
+import { rungFor } from '#shared/sentence/rung'
+import type { MilestoneName } from '#shared/terms'
 import { studioZone } from '#shared/time'
 
 const zone = studioZone('Europe/London')
@@ -95,5 +97,17 @@ describe('the air of a room', () => {
   ])('%s', (text, said) => expect(read(text)).toMatchObject({ kind: 'reading', unknown: [], ...said }))
   it('is in Fahrenheit where the studio reckons in it', () => {
     expect(readSentence('shed 68 degrees', vocabulary, clock, 'us')).toMatchObject({ tempC: 20 })
+  })
+})
+
+describe('the rung a thumb speaks of', () => {
+  const films = (...names: MilestoneName[]) => [{ milestones: names.map(name => ({ name, likelyAt: null, p90At: null, p98At: null, reachedAt: null, reason: null })) }]
+  it('is the one that was said where a film has it, else the next lower one', () => {
+    expect(rungFor('tack-free', films('set-to-touch', 'tack-free'))).toBe('tack-free')
+    expect(rungFor('tack-free', films('set-to-touch', 'dust-free', 'ready-to-recoat'))).toBe('dust-free')
+  })
+  it('stays what was said where nothing fits', () => {
+    expect(rungFor('set-to-touch', films('cured'))).toBe('set-to-touch')
+    expect(rungFor('tack-free', [])).toBe('tack-free')
   })
 })
