@@ -1,6 +1,6 @@
 import { busyOf } from '#shared/planning/occupied'
 import { startsOf } from '#shared/planning/types'
-import type { Interval, Plan, PlanProblem } from '#shared/planning/types'
+import type { Plan, PlanProblem } from '#shared/planning/types'
 import { openWithout } from '../../server/planning/reserved'
 import { studioProblem } from '../bench/planner'
 import { judged } from './clock'
@@ -36,9 +36,11 @@ function placeLost(problem: PlanProblem, plan: Plan): Event {
   return { name: 'a place lost of the fullest', problem: { ...problem, resources: problem.resources.map(each => (each.id === 'shelves' ? { ...each, capacity: most - 1 } : each)) }, hit }
 }
 
-/** One of four people is away on the second day. */
+/** One of four people is away on the first day from the second on that has work for them. */
 function personAway(problem: PlanProblem, plan: Plan): Event {
-  const [from, to]: Interval = [day, 2 * day]
+  const first = Math.min(...(busyOf(plan).get('one') ?? []).map(({ start }) => start).filter(start => start >= day))
+  const from = Math.floor(first / day) * day
+  const to = from + day
   const away = { start: from, end: to }
   const hit = new Set((busyOf(plan).get('one') ?? []).filter(({ start, end }) => start < to && end > from).flatMap(({ activities }) => activities.map(pieceOf)))
   return { name: 'one of four people away for a day', problem: { ...problem, resources: problem.resources.map(each => (each.id === 'one' && each.open ? { ...each, open: openWithout(each.open, [away]) } : each)) }, hit }

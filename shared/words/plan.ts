@@ -5,6 +5,7 @@ export const planWords = {
   noHours: (step: string) => `“${step}” takes longer than anybody who may do it works at a stretch.`,
   windowClosed: (step: string) => `The window for “${step}” meets no working hours: it will want its recovery.`,
   windowMissed: (step: string) => `“${step}” comes after its window has shut: nobody who may do it is free in time. It will want its recovery.`,
+  windowPassed: (step: string) => `“${step}” comes after its window has shut. It will want its recovery.`,
   windowTaken: (step: string) => `In the window for “${step}” everybody who may do it is taken.`,
   noRoom: (step: string, place: string | null) => (place ? `“${step}” finds no free ${place}.` : `“${step}” finds no room for its rest.`),
   cycle: (step: string) => `“${step}” waits for something that waits for it.`,

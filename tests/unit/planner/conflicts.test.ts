@@ -59,3 +59,29 @@ describe('no start is never a bare word', () => {
     expect(conflicts).toMatchObject([{ kind: 'no open time', activity: 'b' }, { kind: 'after unplaced', activity: 'c', other: 'b' }])
   })
 })
+
+describe('what is named is what stands in the way: without it everything has a start', () => {
+  const always = { ...hands, open: null }
+  const shelf = (capacity: number) => ({ id: 'shelf', capacity })
+  const room = { activities: [work('a'), work('b')], rests: [{ from: 'a', to: 'b', uses: { shelf: 2 } }], lags: [{ from: 'a', to: 'b', min: 20 }] }
+  const window = { activities: [work('a'), work('b')], lags: [{ from: 'a', to: 'b', min: 200, max: 300 }] }
+  const booked = { activities: [work('f', 60), work('b')], fixed: [{ activity: 'f', start: 0 }], lags: [{ to: 'b', max: 50 }] }
+  const long: PlanInput = { activities: [work('a', 60), work('b', 60), work('c', 60)] }
+  const pinned: PlanInput = { activities: [work('a'), { id: 'b', minutes: 10 }], lags: [{ from: 'a', to: 'b' }], fixed: [{ activity: 'b', start: 5 }] }
+  it.each<[string, PlanInput, PlanInput]>([
+    ['too much', { activities: [{ id: 'a', minutes: 10, uses: { hands: 2 } }] }, { resources: [{ ...hands, capacity: 2 }] }],
+    ['no open time', { activities: [work('a', 90)] }, { resources: [always] }],
+    ['window closed', window, { resources: [always] }],
+    ['window taken', booked, { resources: [{ ...hands, capacity: 2 }] }],
+    ['no room', { resources: [hands, shelf(1)], ...room }, { resources: [hands, shelf(2)] }],
+    ['cycle', { activities: [work('a'), work('b')], lags: [{ from: 'a', to: 'b', min: 30 }, { from: 'a', to: 'b', max: 20 }] }, { lags: [{ from: 'a', to: 'b', min: 30 }] }],
+    ['horizon', long, { resources: [{ ...hands, open: [...hands.open, [2000, 2060] as const] }], horizon: 3000 }],
+    ['fixed', pinned, { fixed: [] }],
+  ])('%s', (kind, input, without) => {
+    expect(conflictsOf(input).map(conflict => conflict.kind)).toContain(kind)
+    const problem = planProblem({ resources: [hands], horizon: 2000, ...input, ...without })
+    const plan = solve(problem)
+    expect(check(problem, plan)).toEqual([])
+    expect(plan.unplaced).toEqual([])
+  })
+})

@@ -9,14 +9,14 @@ import { solve } from '~~/server/planner/solve'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
 import { isRefusal } from '~~/server/utils/errors'
 import { studioZone } from '#shared/time'
-import { bottleneckSentence } from '#shared/words/what-if'
+import { bottleneckSentence, differenceText } from '#shared/words/what-if'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
 
 // A Tuesday.
 const now = Date.parse('2026-04-07T10:00:00Z')
 const clock = { now, zone: studioZone('UTC') }
-const ask: Ask = problem => Promise.resolve(solve(problem, { schedules: 120 }))
+const ask: Ask = problem => Promise.resolve(solve(problem, { schedules: 40 }))
 
 /** Six boards to be laminated on a bench with room for two at a time, each lying there under weight for a day, due in two days. */
 async function oneBench() {
@@ -39,7 +39,7 @@ describe('the bottleneck', () => {
     const base = await baseOf(db, studioId, now, ask)
     if (isRefusal(base)) throw new Error(base.message)
     const { problem, zeroAt } = base.changed.given
-    const again = solve(copyFrom(withOnePlace(problem, 'bench'), base.from), { schedules: 120 })
+    const again = solve(copyFrom(withOnePlace(problem, 'bench'), base.from), { schedules: 40 })
     const ends = again.entries.reduce((end, entry) => Math.max(end, entry.end), 0)
     const claimed = state.more[0]?.difference
     expect(claimed?.latenessAfter).toBe(again.objective.lateness)
@@ -78,6 +78,24 @@ describe('what if', () => {
     // A date that lies after every end: nothing is late.
     const due = await askWhatIf(db, studioId, { kind: 'due', batchId: fare?.batchId ?? 0, dueAt: new Date(now + 80 * 24 * hour).toISOString() }, now, ask)
     expect(isRefusal(due) ? null : due.difference.latenessAfter).toBe(0)
+  })
+  it.each([
+    { kind: 'places', placeKind: 'bench', more: 5 },
+    { kind: 'open day', weekday: 6, fromMin: 540, toMin: 1020 },
+  ] as const)('says of $kind what solving the changed studio gives, batch by batch and in words', async (change) => {
+    const { db, studioId } = await oneBench()
+    const told = await askWhatIf(db, studioId, change, now, ask)
+    const base = await baseOf(db, studioId, now, ask)
+    const changed = changedProblem(db, studioId, change, now)
+    if (isRefusal(told) || isRefusal(base) || isRefusal(changed)) throw new Error('A studio with a plan is answered.')
+    const { problem, zeroAt } = changed.given
+    const again = solve(copyFrom(problem, base.from), { schedules: 40 })
+    const ends = new Map(again.entries.map(entry => [entry.activity, entry.end]))
+    const endOf = (batchId: number) => zeroAt + minute * Math.max(...problem.jobs.find(job => job.id === `batch ${batchId}`)?.activities.map(id => ends.get(id) ?? NaN) ?? [])
+    expect(told.difference.batches.map(each => each.afterAt)).toEqual(told.difference.batches.map(each => endOf(each.batchId)))
+    expect(told.difference).toMatchObject({ latenessBefore: base.plan.objective.lateness, latenessAfter: again.objective.lateness, windowsAfter: again.objective.windowsMissed })
+    const less = (base.plan.objective.lateness - again.objective.lateness) / 60
+    expect(differenceText(told.difference)).toContain(less < 0.5 ? 'ateness stays as it is' : again.objective.lateness === 0 ? 'none is late any more' : 'less late')
   })
   it('lengthens the waits in a damp room and shortens them in a dry one', async () => {
     const { db, studioId, rooms } = await oneBench()
