@@ -102,7 +102,7 @@ export function basisSentences({ reworkOfTen, benchShare, coats, redone, rework,
   return [
     `${said}. ${seen}`,
     `${Math.round(share * 100)} % of the open hours are taken to reach the bench${benchShare === null ? ', a planning value' : ', as was said'}. It is not learned: what is told says when work was done, not when hands were free.`,
-    'Drying is drawn from the material’s own spread, with what this bench has taught. Minutes swing by a quarter. Nothing begins before the plan says.',
+    'Drying is drawn from the material’s own spread, with what this bench has taught. Minutes swing by a quarter. Nothing begins before the plan says, and each takes a place after whom the plan has it; dust and wet film, vapour and other people wait for each other.',
   ]
 }
 
