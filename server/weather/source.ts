@@ -4,7 +4,7 @@ import * as z from 'zod/mini'
 export interface WeatherHour { at: number, tempC: number, rh: number }
 
 /** Where the weather outside comes from: hours that were and hours that are foretold, in no order. Whatever serves it is behind this. */
-export interface WeatherSource { hours(): Promise<WeatherHour[]> }
+interface WeatherSource { hours(): Promise<WeatherHour[]> }
 
 const answerMs = 10_000
 const mostHours = 1000

@@ -4,7 +4,7 @@ const dayMs = 86_400_000
 /** How fast a part takes on the moisture of the air around it: the rest of the way falls to 1/e in so long. Planning value; sources ask for one to two weeks. */
 export const settlingMs = 7 * dayMs
 /** Percentage points of moisture from which glue joints are to wait. Planning value: some 10 points of humidity. */
-export const apartPoints = 2
+const apartPoints = 2
 const coldest = -5
 
 /** Air a part has lain in from an instant (ms UTC) on, up to the next. Degrees Celsius, a share 0..1. */

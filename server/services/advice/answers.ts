@@ -9,7 +9,7 @@ import type { AdviceAnswer } from '#shared/terms'
 /** Gone on with and nothing told of for so long: the film was clear. */
 const clearAfterMs = 24 * 60 * 60_000
 
-export interface Answered { answer: AdviceAnswer, gapC: number | null }
+interface Answered { answer: AdviceAnswer, gapC: number | null }
 
 /** What was answered about some coats and turns, by coat or turn and code. What was said of a turn holds for the coat that came of it. */
 export function answersOf(db: Database, studioId: number, coats: readonly { id: number, turnId: number | null }[], turnIds: readonly number[]) {
@@ -23,7 +23,7 @@ export function answersOf(db: Database, studioId: number, coats: readonly { id: 
 }
 
 /** One word about one act: a row of six boxes that hazed is one sight of haze. */
-export interface HazeTold { versionId: number, actId: number, answer: AdviceAnswer, gapC: number | null, at: number }
+interface HazeTold { versionId: number, actId: number, answer: AdviceAnswer, gapC: number | null, at: number }
 
 /** What was said of haze on the coats of this studio, the coat's own word before the one its turn got. */
 export function hazeTold(db: Database, studioId: number): HazeTold[] {
