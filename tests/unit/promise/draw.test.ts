@@ -24,7 +24,7 @@ describe('drawn speeds', () => {
 
   it('keep to what the bench has learned, and share of it what all its coats share', () => {
     const sheet = quantileTable(doubt)
-    const tests = Array.from({ length: 12 }, (_, i) => ({ rung: 0, log: 0.5 + 0.03 * i, reached: i > 5, weight: 1, extra: 0 }))
+    const tests = Array.from({ length: 12 }, (_, i) => ({ rung: 0, coat: i, log: 0.5 + 0.03 * i, reached: i > 5, weight: 1, extra: 0 }))
     const bench = learnBench([sheet], tests)
     if (bench.kind !== 'learned' || !bench.rungs[0]) throw new Error('Twelve tests teach something.')
     const learned = learnedTable(sheet, bench.rungs[0])
