@@ -18,11 +18,10 @@ export const editorWords = {
   failed: 'The schedule and the materials could not be fetched.',
   notYours: 'Makers and owners change finishing schedules. You can read this one.',
   reckoning: 'Reckoning the times',
-  why: 'Why so long',
+  why: 'Why',
   name: 'Name',
   summary: 'What it is for',
   summaryHint: 'One or two sentences for whoever chooses a schedule. May stay empty.',
-  about: 'Name and what it is for',
   partsTitle: 'Parts and faces',
   steps: 'Steps',
   stepsHint: 'In the order they are done. Each waits for the step before it on its own faces.',
@@ -43,9 +42,7 @@ export const editorWords = {
   undo: 'Undo',
   undoOf: (what: string) => `Undo: ${undoable(what)}`,
   save: 'Save',
-  saveFirst: 'Keep this schedule',
   saveAgain: (no: number) => `Save as edition ${no}`,
-  saved: (no: number) => `Saved as edition ${no}.`,
   nothing: 'Nothing is different yet.',
   resumed: 'This is your draft from last time. It was not saved yet.',
   leaveDraft: 'Leave the draft',
@@ -205,8 +202,6 @@ export function facesText(targets: readonly DraftTarget[], { parts }: Pick<Sched
 
 export const reasonWords = {
   title: 'Why it takes so long',
-  likely: 'Likely',
-  till: 'Give it till',
   intro: 'The longest way through, step by step. All else fits in beside it.',
   air: (temp: string, humidity: string) => `Reckoned for one piece around the clock, in the studio’s usual air: ${temp}, ${humidity} humidity. Nights and closing hours come on top.`,
   endless: 'A wait has no end in this air, so there is no end to add up to.',
@@ -214,7 +209,6 @@ export const reasonWords = {
   handsIntro: 'Attended minutes, every coat of a round set up anew.',
   lastFilm: 'Last film dry to handle',
   step: 'Step', wait: 'Waits', work: 'Work', whole: 'Batch', each: 'Piece',
-  sum: 'In all',
 } as const
 
 /** Why a leg of the longest way waits: "until ground is dry to sand lightly". */

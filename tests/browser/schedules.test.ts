@@ -100,7 +100,7 @@ describe('a schedule made by keyboard only', () => {
     await page.keyboard.press('Escape')
 
     const drawn = await elapsed(page).innerText()
-    await press(page, key(page, 'Keep this schedule'))
+    await press(page, key(page, 'Save'))
     await page.waitForURL(/\/schedules\/\d+$/)
     await page.getByText('2 times').waitFor()
     // What the editor reckoned is what the studio says.
@@ -121,12 +121,12 @@ describe('a schedule made by touch on a phone', () => {
     }
     await tap(key(page, 'Add a step').last())
     await dialog(page).getByRole('searchbox').fill('acrylic gesso')
-    await tap(dialog(page).getByText('Acrylic gesso', { exact: true }))
+    await tap(dialog(page).getByRole('radio', { name: 'Acrylic gesso', exact: true }))
     await tap(dialog(page).getByRole('button', { name: 'Put it in' }).last())
     taps = 0
     // Its material stands first now, since the schedule uses it already; its faces are those of the step before.
     await tap(key(page, 'Add a step').last())
-    await tap(dialog(page).getByText('Acrylic gesso', { exact: true }))
+    await tap(dialog(page).getByRole('radio', { name: 'Acrylic gesso', exact: true }))
     await tap(dialog(page).getByRole('button', { name: 'Put it in' }).last())
     expect(taps).toBe(3)
     await expect.poll(() => steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso'), expect.stringContaining('Until acrylic gesso is ready to recoat')])
@@ -139,13 +139,13 @@ describe('a schedule made by touch on a phone', () => {
 
     // With no face left it cannot be kept, and the sentence names it.
     await steps(page).last().tap()
-    await page.getByText('Piece, all of it').last().tap()
+    await page.getByRole('checkbox', { name: 'Piece, all of it' }).tap()
     await page.getByText('“Acrylic gesso, second time” works on no part. Choose its faces.').first().waitFor()
-    await key(page, 'Keep this schedule').tap()
+    await key(page, 'Save').tap()
     await page.getByRole('alert').filter({ hasText: '1 thing cannot be' }).waitFor()
     expect(await axeProblems(page)).toEqual([])
     await key(page, /^Undo/).tap()
-    await key(page, 'Keep this schedule').tap()
+    await key(page, 'Save').tap()
     await page.waitForURL(/\/schedules\/\d+$/)
 
     await page.getByRole('link', { name: 'Start a batch with it' }).tap()
