@@ -1,6 +1,5 @@
 /** What a file is by its first bytes. Its name and what the browser says of it are claims, and not looked at. */
-export const fileTypes = ['application/pdf', 'image/jpeg', 'image/png', 'image/heic', 'image/webp', 'image/gif'] as const
-export type FileType = typeof fileTypes[number]
+export type FileType = 'application/pdf' | 'image/jpeg' | 'image/png' | 'image/heic' | 'image/webp' | 'image/gif'
 
 /** The ending a file of each type is given when it is fetched. */
 export const fileEndings: Record<FileType, string> = { 'application/pdf': 'pdf', 'image/jpeg': 'jpg', 'image/png': 'png', 'image/heic': 'heic', 'image/webp': 'webp', 'image/gif': 'gif' }

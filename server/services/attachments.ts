@@ -13,7 +13,7 @@ import { fileRefusals } from '#shared/words/files'
 type AttachmentRow = typeof attachment.$inferSelect
 
 /** What a file hangs on: a photograph, in one of its two sizes, or an edition of a material (its data sheet). */
-export type AttachedTo = { kind: 'photo' | 'thumbnail', photoId: number } | { kind: 'data sheet', materialVersionId: number }
+type AttachedTo = { kind: 'photo' | 'thumbnail', photoId: number } | { kind: 'data sheet', materialVersionId: number }
 
 /** Notes a kept file, inside the transaction of the change it belongs to. @param name what its owner calls it, without a path */
 export function attach(tx: Transaction, studioId: number, to: AttachedTo, file: KeptFile, name: string | null, now: number): number {

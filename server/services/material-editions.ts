@@ -49,7 +49,7 @@ export function partsOfEdition(db: Reader, studioId: number, versionId: number):
   return { basis: row.basis, parts: parts.map(({ materialId, parts: share, private: hidden }) => ({ materialId, parts: share, private: hidden })) }
 }
 
-export interface NewEdition { materialId: number, edition: Edition, parts: MixParts, memberId: number, note: string, now: number }
+interface NewEdition { materialId: number, edition: Edition, parts: MixParts, memberId: number, note: string, now: number }
 
 /**
  * Adds an edition. Coats keep the one they were put on with; steps to come go over to this one, and so does what was learned. What was forgotten

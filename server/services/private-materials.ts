@@ -7,7 +7,7 @@ import { scoped } from '~~/server/utils/scoped'
  * Materials that who may not see private mixes must not meet: the studio's own that are a private part of some mix and of which nothing was
  * ever put on, nor is to be, by themselves. Those of the starter library stand in every studio's list and say nothing of a mix.
  */
-export function hiddenMaterials(db: Database | Transaction, studioId: number): ReadonlySet<number> {
+function hiddenMaterials(db: Database | Transaction, studioId: number): ReadonlySet<number> {
   const rows = db.all<{ id: number }>(sql`select distinct material.id from material join mix_part part on part.material_id = material.id and part.private = 1
     where material.studio_id = ${studioId} and material.library_key is null
     and not exists (select 1 from schedule_step step where step.material_id = material.id)

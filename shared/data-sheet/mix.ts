@@ -6,7 +6,7 @@ import type { FigureWire, RungWire, WindowWire } from '#shared/schemas/material-
 import { milestoneNames } from '#shared/terms'
 import { sheetSources } from '#shared/words/data-sheet'
 
-export interface MixedPart { parts: number, edition: Edition }
+interface MixedPart { parts: number, edition: Edition }
 
 /** From the thinner that asks for least care to the one that asks for most. */
 const thinners: readonly Solvent[] = ['none', 'water', 'mineral spirits', 'turpentine', 'aliphatic solvent', 'alcohol', 'lacquer thinner']

@@ -3,10 +3,10 @@ import type { Units } from '#shared/units'
 /** What a figure of a data sheet measures, and the unit it is kept in: minutes, °C, a share, µm, m2/L, g/L. */
 export type Dimension = 'time' | 'temperature' | 'humidity' | 'film' | 'spread' | 'vapour'
 
-export type Quantity = { ok: true, low: number, high: number } | { ok: false, why: 'unread' | 'no unit' | 'order' }
+type Quantity = { ok: true, low: number, high: number } | { ok: false, why: 'unread' | 'no unit' | 'order' }
 
 /** kg/L: what a gram on a square metre is taken at, as sheets that weigh seldom tell the density. A planning value. */
-export const assumedDensity = 1.1
+const assumedDensity = 1.1
 
 /** One US gallon, 3.785411784 L exactly; one pound avoirdupois, 453.59237 g exactly; one foot, 0.3048 m exactly. */
 const litresPerGallon = 3.785411784

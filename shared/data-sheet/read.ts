@@ -14,7 +14,7 @@ export type TypedSheet = Partial<Record<SheetField, string>>
 
 interface Read { low: number, high: number, typed: string }
 
-export interface ReadSheet {
+interface ReadSheet {
   milestones: (Read & { name: MilestoneName })[]
   figures: (Read & { name: FigureName })[]
   window: { from: number | null, to: number, typed: string } | null

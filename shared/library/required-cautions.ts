@@ -21,7 +21,7 @@ const markOf: Partial<Record<Content, CautionKey>> = { epoxy: 'epoxy skin', cyan
 
 export const ofSolvent: readonly CautionKey[] = ['vapour', 'flames', 'fan', 'dust mask', 'sleeping room', 'children', 'symptoms', 'waste can']
 
-export interface Declared { solvent: string, contents: readonly Content[], gloves: boolean }
+interface Declared { solvent: string, contents: readonly Content[], gloves: boolean }
 
 /** The cautions that nothing with this thinner and these contents may be without, each once. A thinner that is not known by name counts as a solvent. */
 export function requiredCautions({ solvent, contents: held, gloves }: Declared): CautionKey[] {

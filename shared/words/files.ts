@@ -5,7 +5,7 @@ const typeNames: Record<FileType, string> = {
 }
 
 /** "a PDF", "a JPEG picture". */
-export const fileTypeText = (type: FileType) => typeNames[type]
+const fileTypeText = (type: FileType) => typeNames[type]
 
 const megabyte = 1_000_000
 
