@@ -24,10 +24,10 @@ const rescueScenarios = 60
 interface Watched { orderId: number, promiseId: number, promisedAt: number, dateAt: number, batchIds: number[] }
 
 /** How one promise stands. `others`: batches that might save it, moved back, where it begins to slip; null where nothing is to be looked for. */
-export interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, others: readonly number[] | null }
+interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, others: readonly number[] | null }
 
 /** What the watch asks of the worker, one question at a time, so that people's own come between. */
-export interface WatchQuestions { reckon: () => Promise<Reckoned[] | Refusal>, saves: (orderId: number, batchId: number) => Promise<boolean | Refusal> }
+interface WatchQuestions { reckon: () => Promise<Reckoned[] | Refusal>, saves: (orderId: number, batchId: number) => Promise<boolean | Refusal> }
 
 /**
  * Looks at every promised date whose plan has changed since it was last looked at, and notes whether it holds. Where one begins to slip, looks

@@ -9,7 +9,7 @@ import { conflict } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { promiseRefusals } from '#shared/words/promise'
 
-export interface AskerOptions {
+interface AskerOptions {
   /** The built worker; null answers in this thread. */
   worker: URL | null
   /** Milliseconds after which a worker that says nothing is ended. */
