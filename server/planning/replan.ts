@@ -19,7 +19,7 @@ import { check } from '#shared/planning/check'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 
 /** Solves a problem somewhere: in the worker, or at once where a test or a seed wants to wait for nothing. */
-export type Solver = (key: string, problem: PlanProblem, onFirst: NonNullable<RunOptions['onFirst']>) => Promise<PlanResult>
+type Solver = (key: string, problem: PlanProblem, onFirst: NonNullable<RunOptions['onFirst']>) => Promise<PlanResult>
 
 /** In this thread and without a wait: for tests, and for filling an empty studio. */
 export const atOnce: Solver = (_key, problem) => {
