@@ -233,7 +233,7 @@ export const editionWords = {
   link: 'Editions and what changed',
   change: 'Change it',
   copy: 'Copy it',
-  failed: 'The editions could not be fetched.',
+  failed: 'The editions of this schedule could not be fetched.',
   waiting: 'Fetching the editions',
   edition: (no: number) => `Edition ${no}`,
   newest: 'the newest',
