@@ -127,7 +127,7 @@ describe('many pieces under a thumb', () => {
     await batch('Bowl', 2, false)
     const { page } = await onPhone()
     await visit(page, '/pieces')
-    await page.getByText('Choose Bowl 1').or(page.getByRole('checkbox', { name: 'Choose Bowl 1' })).first().tap()
+    await page.getByRole('checkbox', { name: 'Choose Bowl 1' }).tap()
     await acts(page).getByRole('button', { name: 'More' }).tap()
     await dialog(page).getByRole('button', { name: /^Gone/ }).tap()
     await dialog(page).getByRole('button', { name: 'Sold' }).tap()
