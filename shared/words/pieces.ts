@@ -91,6 +91,7 @@ export const piecesWords = {
   undo: 'Undo',
   close: 'Close',
   backAct: 'It is back',
+  backOf: (name: string) => `It is back: ${name}`,
   backTitle: 'Where it stands now',
   notMaker: 'A maker tells these.',
 } as const
