@@ -217,7 +217,7 @@ describe('carriers in the settings', () => {
     await page.getByRole('dialog').getByRole('button', { name: 'Save' }).click()
     await carriers.getByRole('button', { name: 'Take Short board away' }).click()
     await page.getByRole('dialog').getByRole('button', { name: 'Take away' }).click()
-    await carriers.getByText('Short board').waitFor({ state: 'detached' })
+    await carriers.getByText('Short board', { exact: true }).waitFor({ state: 'detached' })
     await carriers.getByRole('button', { name: 'Take Tray 1 away' }).click()
     await page.getByRole('dialog').getByRole('button', { name: 'Take away' }).click()
     await page.getByText('These stand on it now: Bowls 1 and 2. Put them elsewhere first.').waitFor()

@@ -20,7 +20,7 @@ let mixId: number
 function makeMix(file: string) {
   const db = new Sqlite(file)
   const [material, open, secret] = db.prepare('select id from material where studio_id = 1 order by id limit 3').pluck().all() as number[]
-  const mix = db.prepare('insert into mix (studio_id, material_id) values (1, ?)').run(material).lastInsertRowid
+  const mix = db.prepare('insert into mix (studio_id, material_id, version_id) select 1, material_id, max(id) from material_version where material_id = ?').run(material).lastInsertRowid
   db.prepare('insert into mix_part (studio_id, mix_id, material_id, parts, private) values (1, ?, ?, 3, 0), (1, ?, ?, ?, 1)').run(mix, open, mix, secret, secretShare)
   db.close()
   return material ?? 0

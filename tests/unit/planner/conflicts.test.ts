@@ -68,7 +68,7 @@ describe('what is named is what stands in the way: without it everything has a s
   const booked = { activities: [work('f', 60), work('b')], fixed: [{ activity: 'f', start: 0 }], lags: [{ to: 'b', max: 50 }] }
   const long: PlanInput = { activities: [work('a', 60), work('b', 60), work('c', 60)] }
   const pinned: PlanInput = { activities: [work('a'), { id: 'b', minutes: 10 }], lags: [{ from: 'a', to: 'b' }], fixed: [{ activity: 'b', start: 5 }] }
-  it.each<[string, PlanInput, PlanInput]>([
+  it.each<[string, PlanInput, Partial<PlanInput>]>([
     ['too much', { activities: [{ id: 'a', minutes: 10, uses: { hands: 2 } }] }, { resources: [{ ...hands, capacity: 2 }] }],
     ['no open time', { activities: [work('a', 90)] }, { resources: [always] }],
     ['window closed', window, { resources: [always] }],
