@@ -9,7 +9,7 @@ export interface MorningQuestion { job: Job, by: string | null, beganAt: number,
 
 /**
  * What was begun, or was to be put on, on an earlier day and not told since, the oldest first, each with a guess of when
- * it was finished: what was begun after its usual minutes, what was only planned at the end of its plan.
+ * it was finished: its usual minutes later. The plan's own end says nothing: it has moved on since.
  */
 export function morningQuestions(jobs: readonly Job[], clock: Clock): MorningQuestion[] {
   const today = startOfLocalDay(clock.now, clock.zone)
@@ -18,7 +18,6 @@ export function morningQuestions(jobs: readonly Job[], clock: Clock): MorningQue
     const usual = (turn.setupMin + turn.pieceMin * pieces.length) * minute
     if (turn.status === 'doing' && turn.doing && turn.doing.sinceAt < today) return [{ job, by: turn.doing.by, beganAt: turn.doing.sinceAt, guessAt: Math.min(turn.doing.sinceAt + usual, clock.now) }]
     if (!job.due || job.dueAt === null || job.dueAt >= today) return []
-    const ends = pieces.flatMap(each => each.turn.turn.plan?.endsAt ?? [])
-    return [{ job, by: null, beganAt: job.dueAt, guessAt: Math.min(Math.max(job.dueAt, ...ends), clock.now) }]
+    return [{ job, by: null, beganAt: job.dueAt, guessAt: Math.min(job.dueAt + usual, clock.now) }]
   }).sort((a, b) => a.beganAt - b.beganAt)
 }

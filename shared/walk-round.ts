@@ -1,4 +1,5 @@
 import type { PieceState, PlaceState, StudioState } from '#shared/schemas/piece-state'
+import { walkWords } from '#shared/words/walk-round'
 
 /** What of a piece stands in one place, as the studio remembers it. `seenAt` the oldest of its parts, ms UTC; `missing` somebody did not find it. */
 export interface Expected { piece: PieceState, partIds: number[], name: string, seenAt: number | null, missing: boolean }
@@ -16,7 +17,7 @@ export function walkStops(state: Pick<StudioState, 'places' | 'rooms' | 'pieces'
       const here = piece.groups.filter(group => group.placeId === place.id).flatMap(group => group.parts)
       if (here.length === 0) return []
       const whole = here.length === piece.groups.flatMap(group => group.parts).length
-      return { piece, partIds: here.map(part => part.partId), name: whole ? piece.name : `${piece.name}, ${here.map(part => part.name).join(', ')}`, seenAt: oldest(here.map(part => part.seenAt)), missing: here.some(part => part.missingAt !== null) }
+      return { piece, partIds: here.map(part => part.partId), name: whole ? piece.name : walkWords.partsOf(piece.name, here.map(part => part.name)), seenAt: oldest(here.map(part => part.seenAt)), missing: here.some(part => part.missingAt !== null) }
     }),
   })).filter(stop => stop.expected.length > 0)
 }

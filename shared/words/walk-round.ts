@@ -9,6 +9,8 @@ export const walkWords = {
   noneSays: 'Once pieces have a place, they are looked after here.',
   of: (no: number, count: number) => `Shelf ${no} of ${count}`,
   here: (here: number, all: number) => here === all ? all === 1 ? 'It is here' : `All ${all} are here` : here === 0 ? all === 1 ? 'It is not here' : `None of the ${all} is here` : `${here} here, ${all - here} not`,
+  /** Which parts of a piece, by name while that is short. */
+  partsOf: (piece: string, parts: readonly string[]) => `${piece}, ${parts.length > 2 ? `${parts.length} parts` : parts.join(' and ').toLowerCase()}`,
   missing: 'not there',
   seen: (when: string) => `seen ${when}`,
   never: 'not seen yet',

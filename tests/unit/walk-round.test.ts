@@ -22,7 +22,7 @@ describe('the walk-round', () => {
     const [rail, shelf] = walkStops(state)
     expect(rail?.expected).toMatchObject([{ name: 'Box, lid', partIds: [4], seenAt: 400, missing: true }])
     // A part that nobody has seen makes the whole not seen.
-    expect(shelf?.expected).toMatchObject([{ name: 'Ledger 1', partIds: [1], seenAt: 500, missing: false }, { name: 'Box, case, tray', partIds: [2, 3], seenAt: null, missing: false }])
+    expect(shelf?.expected).toMatchObject([{ name: 'Ledger 1', partIds: [1], seenAt: 500, missing: false }, { name: 'Box, case and tray', partIds: [2, 3], seenAt: null, missing: false }])
   })
   it('offers elsewhere what was not found', () => {
     expect(lostPieces(walkStops(state), 10).map(each => `${each.name} from ${each.place.name}`)).toEqual(['Box, lid from Rail'])
