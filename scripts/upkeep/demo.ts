@@ -1,5 +1,6 @@
 import { eq } from 'drizzle-orm'
-import { existsSync } from 'node:fs'
+import { existsSync, rmSync } from 'node:fs'
+import { join } from 'node:path'
 import { isOpen } from './archive'
 import { Refused } from './settings'
 import { person, studio } from '~~/db/schema'
@@ -8,7 +9,7 @@ import type { Config } from '~~/server/utils/config'
 import { prepareDatabase } from '~~/server/utils/database'
 import type { Database } from '~~/server/utils/database'
 
-type Settings = Pick<Config, 'databaseFile' | 'backupFolder' | 'production'>
+type Settings = Pick<Config, 'databaseFile' | 'backupFolder' | 'storageFolder' | 'production'>
 
 /** The database, brought up to date as a start would, while no server has it; what `work` does is all that happens to it. */
 async function alone<T>({ databaseFile, backupFolder }: Settings, now: number, work: (db: Database) => T | Promise<T>): Promise<T> {
@@ -45,6 +46,7 @@ export function removeDemo(settings: Settings, now: number): Promise<string> {
       tx.delete(studio).where(eq(studio.id, found)).run()
       tx.delete(person).where(eq(person.demo, true)).run()
     })
+    rmSync(join(settings.storageFolder, String(found)), { recursive: true, force: true })
     const left = db.select({ id: studio.id }).from(studio).limit(1).all().length
     return `The demo studio is removed.${left === 0 ? ' No studio is left: set STILLWET_DEMO=0, or the next start makes it again.' : ''}`
   })

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto'
 import Sqlite from 'better-sqlite3'
 import Papa from 'papaparse'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
@@ -44,6 +45,16 @@ describe('the archive of a studio', () => {
     }
     expect([...files.keys()].filter(name => doors.some(door => name === `tables/${door}.json`))).toEqual([])
     db.close()
+  })
+  it('holds photographs and data sheets as they are kept', async () => {
+    const files = await archive(owner)
+    const kept = rowsOf(files, 'tables/attachment.json') as { id: number, kind: string, sha256: string }[]
+    expect(kept.map(row => row.kind).sort()).toEqual(['data sheet', 'photo', 'thumbnail'])
+    for (const row of kept) {
+      const [name = ''] = [...files.keys()].filter(each => each.startsWith(`files/${row.id}-`))
+      expect(createHash('sha256').update(files.get(name) ?? '').digest('hex')).toBe(row.sha256)
+    }
+    expect([...files.keys()].filter(name => name.endsWith('.pdf'))).toHaveLength(1)
   })
   it('has three sheets that a spreadsheet reads, with times by the studio\'s clock', async () => {
     const files = await archive(owner)

@@ -11,7 +11,7 @@ const now = Date.parse('2026-06-10T12:00:00Z')
 
 function settings() {
   const folder = mkdtempSync(join(tmpdir(), 'stillwet-demo-'))
-  return { databaseFile: join(folder, 'stillwet.db'), backupFolder: join(folder, 'backups'), production: false }
+  return { databaseFile: join(folder, 'stillwet.db'), backupFolder: join(folder, 'backups'), storageFolder: join(folder, 'storage'), production: false }
 }
 /** Rows of every table, but for those SQLite and the migrations keep. */
 function counts(file: string): Record<string, number> {
