@@ -32,19 +32,34 @@ async function archive(who: Visitor) {
 const textOf = (files: Map<string, Buffer>, name: string) => files.get(name)?.toString('utf8') ?? ''
 const rowsOf = (files: Map<string, Buffer>, name: string) => JSON.parse(textOf(files, name)) as Record<string, unknown>[]
 
+const doors = ['session', 'invitation', 'wall_link', 'calendar_link', 'sensor_address', 'bench_tablet', 'subscription', 'delivery']
+
+/** Rows of the first studio by table. */
+function rowCounts(): Record<string, number> {
+  const db = new Sqlite(server.databaseFile, { readonly: true })
+  const tables = db.prepare<[], { name: string }>(`select m.name from sqlite_master m where m.type = 'table' and exists (select 1 from pragma_table_info(m.name) where name = 'studio_id')`).all()
+  const counts = Object.fromEntries(tables.map(({ name }) => [name, db.prepare<[], { n: number }>(`select count(*) as n from "${name}" where studio_id = 1`).get()?.n ?? -1]))
+  db.close()
+  return counts
+}
+
+/** An archive during which the server's own planning wrote nothing. */
+async function stillArchive() {
+  for (let tries = 0; tries < 20; tries += 1) {
+    const counts = rowCounts()
+    const files = await archive(owner)
+    if (JSON.stringify(rowCounts()) === JSON.stringify(counts)) return { files, counts }
+  }
+  throw new Error('The studio never stood still.')
+}
+
 describe('the archive of a studio', () => {
   it('holds every row of its tables, but for the doors', async () => {
-    const files = await archive(owner)
-    const db = new Sqlite(server.databaseFile, { readonly: true })
-    const tables = db.prepare<[], { name: string }>(`select m.name from sqlite_master m where m.type = 'table' and exists (select 1 from pragma_table_info(m.name) where name = 'studio_id')`).all().map(row => row.name)
-    const doors = ['session', 'invitation', 'wall_link', 'calendar_link', 'sensor_address', 'bench_tablet', 'subscription', 'delivery']
-    expect(tables).toEqual(expect.arrayContaining(doors))
-    for (const table of tables.filter(name => !doors.includes(name))) {
-      const { count } = db.prepare<[], { count: number }>(`select count(*) as count from "${table}" where studio_id = 1`).get() ?? { count: -1 }
-      expect({ table, rows: rowsOf(files, `tables/${table}.json`).length }).toEqual({ table, rows: count })
-    }
-    expect([...files.keys()].filter(name => doors.some(door => name === `tables/${door}.json`))).toEqual([])
-    db.close()
+    const { files, counts } = await stillArchive()
+    for (const door of doors) expect(files.has(`tables/${door}.json`)).toBe(false)
+    const rest = Object.entries(counts).filter(([name]) => !doors.includes(name))
+    expect(rest.length).toBeGreaterThan(60)
+    expect(Object.fromEntries(rest.map(([name]) => [name, rowsOf(files, `tables/${name}.json`).length]))).toEqual(Object.fromEntries(rest))
   })
   it('holds photographs and data sheets as they are kept', async () => {
     const files = await archive(owner)
