@@ -75,7 +75,7 @@ describe('a logger’s file', () => {
     await page.getByText(/were there already|is in Shed already/).waitFor()
 
     await page.getByRole('link', { name: 'See the chart' }).click()
-    const slider = page.getByRole('slider', { name: 'Look along the last day: Shed' })
+    const slider = page.getByRole('slider', { name: 'Look along the last day and the night ahead: Shed' })
     await slider.waitFor()
     expect(await slider.getAttribute('aria-valuetext')).toMatch(/^Now: \d/)
     await slider.focus()
