@@ -84,7 +84,11 @@ describe('photographs of a piece', () => {
     await choose(page, jpeg('three.jpg'))
     await page.getByText(/Not sent yet: the studio was not reached/).waitFor()
     await page.context().setOffline(false)
-    await page.getByRole('img', { name: 'Box 1', exact: true }).waitFor()
+    const sent = page.getByRole('img', { name: 'Box 1', exact: true })
+    await sent.waitFor({ state: 'attached' })
+    // Pictures are fetched when one comes near them.
+    await sent.evaluate(picture => picture.scrollIntoView())
+    await sent.waitFor()
     expect(await page.getByText(/Not sent yet/).count()).toBe(0)
   })
 })
