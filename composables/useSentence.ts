@@ -67,6 +67,7 @@ export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>
   /** The form below says the same, so that what was not understood is chosen there. */
   function fill() {
     putOn.chosen.value = card.meant.value.map(piece => piece.id)
+    putOn.on.wholeAgain()
     if (card.chosenId.value !== null) putOn.materialId.value = card.chosenId.value
     if (card.when.value) putOn.when.value = card.when.value
   }

@@ -1,7 +1,10 @@
+import { partMistake, partsOf, rowsOf } from '#shared/parts'
+import type { PartRow, PartShape } from '#shared/parts'
 import type { BatchRequest } from '#shared/schemas/batch'
 import type { BatchToComeRequest } from '#shared/schemas/promise'
 import { fromLocal } from '#shared/time'
 import type { StudioZone } from '#shared/time'
+import { partMistakes } from '#shared/words/parts'
 import { startWords } from '#shared/words/start'
 
 const shelf = 'stillwet start'
@@ -26,9 +29,24 @@ export interface StartDraft {
   areaM2: number | null
   /** The day to promise with the start, ms UTC. */
   promiseAt: number | null
+  /** What each piece is made of where no schedule says it. The lines of every shape that was looked at are kept. */
+  shape: PartShape
+  partRows: Partial<Record<PartShape, PartRow[]>>
 }
 
-const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null, promiseAt: null })
+const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null, promiseAt: null, shape: 'one', partRows: {} })
+
+/** The lines of the form for the shape that is chosen. */
+export const partRowsOf = (draft: Pick<StartDraft, 'shape' | 'partRows'>): PartRow[] => draft.partRows[draft.shape] ?? rowsOf(draft.shape)
+
+/** Parts are typed only where no schedule has them. */
+const hasOwnParts = ({ scheduleId, shape }: StartDraft) => scheduleId === 0 && shape !== 'one'
+
+/** The sentence that a mistake in the lines is told in, under the name of its line. */
+function partFields(draft: StartDraft): Record<string, string> {
+  const mistake = hasOwnParts(draft) ? partMistake(partRowsOf(draft)) : null
+  return mistake === null ? {} : { [mistake.row === null ? 'parts' : `part ${mistake.row}`]: partMistakes[mistake.why] }
+}
 
 /** "Ledger" from "Ledgers", for a start: what one piece of a batch may be called. */
 export function stemOf(batchName: string): string {
@@ -81,6 +99,7 @@ export function requestOf(draft: StartDraft, names: readonly string[], startsAt:
   const dueAt = draft.dueDay === '' ? null : typedInstant(draft.dueDay, draft.dueTime || '17:00', zone)
   const fields: Record<string, string> = {
     ...draft.scheduleId === null ? { scheduleId: startWords.wantSchedule } : {},
+    ...partFields(draft),
     ...startsAt === null ? { startsAt: startWords.wantWhen } : {},
     ...names.length === 0 || draft.count === null || !Number.isInteger(draft.count) || draft.count > 60 ? { pieces: startWords.wantCount } : {},
     ...draft.placeId === null ? { placeId: startWords.wantPlace } : {},
@@ -93,7 +112,7 @@ export function requestOf(draft: StartDraft, names: readonly string[], startsAt:
     body: {
       clientKey: draft.clientKey, name: draft.name, scheduleId: draft.scheduleId === 0 ? null : draft.scheduleId, pieces: [...names], sizeUnits: draft.sizeUnits ?? 1, placeId: draft.placeId,
       order: draft.orderName.trim() === '' ? null : { name: draft.orderName, dueAt: dueAt === null ? null : new Date(dueAt).toISOString() },
-      startsAt: new Date(startsAt).toISOString(), oldObject: draft.oldObject, areaM2: draft.areaM2,
+      startsAt: new Date(startsAt).toISOString(), oldObject: draft.oldObject, areaM2: draft.areaM2, ...hasOwnParts(draft) ? { parts: partsOf(partRowsOf(draft)) } : {},
     },
   }
 }

@@ -20,8 +20,8 @@ import type { Told } from '~/stores/untold'
 
 type Studio = Awaited<ReturnType<typeof useStudio>>
 
-/** What a page tells: the kind, what it says, when, and words for its step or material. */
-export interface Telling { kind: TellableKind, body: ActRequest['body'], pieces: readonly Pick<PieceState, 'id' | 'name' | 'version'>[], doneAt: number, partIds?: number[], step?: string | null, material?: string | null, detail?: ActDetail, bundle?: number | null }
+/** What a page tells: the kind, what it says, when, and words for its step or material; `names` where the pieces' own do not say all. */
+export interface Telling { kind: TellableKind, body: ActRequest['body'], pieces: readonly Pick<PieceState, 'id' | 'name' | 'version'>[], doneAt: number, partIds?: number[], step?: string | null, material?: string | null, detail?: ActDetail, bundle?: number | null, names?: string }
 
 function factOf({ kind, body, step, material, detail }: Telling): string {
   const milestone = milestoneNames.find(name => name === body.milestone) ?? null
@@ -69,7 +69,7 @@ function fellowsMoved(kind: TellableKind, before: StudioState | null, after: Stu
 }
 
 /** What a line on the page keeps of a telling, whatever came of it. */
-const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, detail: telling.detail ?? {}, bundle: telling.bundle ?? null, fact: factOf(telling), names: groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
+const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, detail: telling.detail ?? {}, bundle: telling.bundle ?? null, fact: factOf(telling), names: telling.names ?? groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
 
 /** Solvent work that waits for its three answers: nothing of it is recorded before. */
 function waitingWork() {
@@ -168,7 +168,7 @@ function makeTelling(studio: Studio) {
   /** After somebody else was first: the same tap on the pieces as they stand now. */
   async function again(line: ToldLine) {
     told.putAway(line.key)
-    await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material, detail: line.detail })
+    await say({ kind: line.kind, body: line.body, pieces: current(line.pieceIds), doneAt: line.doneAt, partIds: line.partIds, step: line.step, material: line.material, detail: line.detail, names: line.names })
   }
 
   return { say, sayAll: inOneGo(told, current, say), again, dropLater, busy, told, asked, answer: (vapour: VapourAnswers) => answerAll(takeWaiting(), current, say, vapour), leave: () => void takeWaiting(), undo: undoing(told, line => amend(line, { takeBack: true }), dropLater), move: (line: ToldLine, doneAt: number) => amend(line, { doneAt }) }

@@ -4,6 +4,7 @@ import type { MovedTurn } from '#shared/plan-moves'
 import type { StandingPiece } from '#shared/shelf'
 import type { Clock } from '#shared/time'
 import { aboutToShutMs } from '#shared/verdict/begin'
+import { speakingParts } from '#shared/verdict/piece'
 import type { ReadGroup, ReadPiece } from '#shared/verdict/piece'
 import type { Verdict } from '#shared/verdict/types'
 import { groupVerdict } from '#shared/verdict/verdict'
@@ -11,6 +12,7 @@ import { airText, keepOutText, partsSuffix, swatchText, takenText } from '#share
 import { wasText } from '#shared/words/plan-moves'
 import { groupNames } from '#shared/words/group'
 import { momentText } from '#shared/words/moments'
+import { ofParts } from '#shared/words/parts-said'
 import { betterText } from '#shared/words/verdict'
 
 /** What stands of one piece at one place: its groups there, with the verdict on them. Loose parts of a piece lie together. */
@@ -62,7 +64,7 @@ function momentOf({ piece, verdict, whole }: Standing, clock: Clock): Pick<Stand
 export function standingCell(standing: Standing, clock: Clock, moved: ReadonlyMap<number, MovedTurn>): BoardCell {
   const { piece, verdict, name, suffix } = standing
   return {
-    key: piece.piece.id, name: name + suffix, pieceName: name, suffix, series: piece.piece.batch.id, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock),
+    key: piece.piece.id, name: name + suffix, pieceName: name, suffix, series: piece.piece.batch.id, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock, ofParts(speakingParts(standing.groups, verdict))),
     ...momentOf(standing, clock), was: wasOf(piece, moved, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
   }
 }

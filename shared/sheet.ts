@@ -7,9 +7,11 @@ import { briefCautions, briefDeferral } from '#shared/library/brief-cautions'
 import { solventRooms } from '#shared/solvent-rooms'
 import { clockTime } from '#shared/time'
 import type { Clock } from '#shared/time'
+import { speakingParts } from '#shared/verdict/piece'
 import type { ReadPiece } from '#shared/verdict/piece'
 import type { VerdictKind } from '#shared/verdict/types'
 import { groupNames } from '#shared/words/group'
+import { ofParts } from '#shared/words/parts-said'
 import { sheetKeepOut, sheetRags, sheetVapour, sheetWords } from '#shared/words/sheet'
 import { betterText, limitTexts, verdictReason, verdictTitle } from '#shared/words/verdict'
 
@@ -25,8 +27,10 @@ interface SheetLine { id: number, head: string, says: string }
 /** Reasons that the verdict's own words, or a line of the page, say already. */
 const said = ['dry', 'grip wet', 'cut off']
 
-function linesOf({ verdict }: Standing, clock: Clock): string[] {
-  const reason = said.includes(verdict.reason.code) ? [] : [verdictReason(verdict.reason, clock)]
+function linesOf({ verdict, groups }: Standing, clock: Clock): string[] {
+  const parts = ofParts(speakingParts(groups, verdict))
+  const why = said.includes(verdict.reason.code) ? '' : verdictReason(verdict.reason, clock)
+  const reason = [`${why}${parts}`.trim()].filter(Boolean)
   const better = betterText(verdict, clock)
   return [...reason, ...better ? [better] : [], ...limitTexts(verdict.limits, clock)]
 }

@@ -13,6 +13,7 @@ import { insertAct } from '~~/server/work/record'
 import { refold } from '~~/server/work/refold'
 import { readEdition } from '~~/server/work/schedule'
 import type { ScheduleEdition } from '~~/server/work/schedule'
+import { keyedParts } from '#shared/parts'
 import type { BatchRequest } from '#shared/schemas/batch'
 import { intakeQuestions } from '#shared/terms'
 import { batchRefusals, wholePart } from '#shared/words/batch'
@@ -36,7 +37,8 @@ export function startBatch(db: Database, studioId: number, teller: Teller, reque
     const startsAt = Date.parse(request.startsAt)
     const actId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: 'batch started', doneAt: startsAt, toldAt: now, acting: actingOf(teller), body: { materials, placeId: request.placeId }, subjects: [] })
     const batchId = tx.insert(batch).values({ studioId, orderId: orderFor(tx, studioId, request), scheduleVersionId: version, name: request.name, actId, startsAt }).returning({ id: batch.id }).get().id
-    const pieceIds = request.pieces.map((name, index) => insertPiece(tx, studioId, { batchId, name, ordinal: index + 1, sizeUnits: request.sizeUnits, areaM2: request.areaM2 ?? null }, edition, actId, startsAt))
+    const parts = edition?.parts ?? (request.parts ? keyedParts(request.parts) : [{ ...wholePart, grip: null, faces: [] }])
+    const pieceIds = request.pieces.map((name, index) => insertPiece(tx, studioId, { batchId, name, ordinal: index + 1, sizeUnits: request.sizeUnits, areaM2: request.areaM2 ?? null }, parts, actId, startsAt))
     if (request.oldObject) tx.insert(intake).values(pieceIds.flatMap(pieceId => intakeQuestions.map(question => ({ studioId, pieceId, question })))).run()
     refold(tx, studioId, pieceIds)
     predictPieces(tx, studioId, pieceIds, now)
@@ -72,6 +74,8 @@ export function newestMaterials(tx: Database | Transaction, studioId: number, ed
 function findRefusal(tx: Transaction, studioId: number, request: BatchRequest, materials: readonly number[], now: number): Refusal | null {
   const startsAt = Date.parse(request.startsAt)
   if (startsAt < now - correctionReach || startsAt > now + farthestStart) return malformed({ startsAt: batchRefusals.startTooOld })
+  const parts = refuseParts(request)
+  if (parts) return parts
   if (new Set(request.pieces).size < request.pieces.length) return malformed({ pieces: batchRefusals.sameNames })
   const where = tx.select({ place, room }).from(place).innerJoin(room, eq(room.id, place.roomId)).where(owned(place, studioId, request.placeId)).get()
   if (!where) return malformed({ placeId: batchRefusals.noPlace })
@@ -79,6 +83,16 @@ function findRefusal(tx: Transaction, studioId: number, request: BatchRequest, m
   const wanted = request.pieces.length * request.sizeUnits
   if (taken + wanted > where.place.capacity) return impossible(batchRefusals.full(where.place.name, Math.max(0, where.place.capacity - taken), wanted), { placeId: batchRefusals.full(where.place.name, Math.max(0, where.place.capacity - taken), wanted) })
   return where.room.sleptIn && usesSolvent(tx, studioId, materials) ? impossible(batchRefusals.sleptIn(where.room.name), { placeId: batchRefusals.sleptIn(where.room.name) }) : null
+}
+
+/** A schedule knows its parts; parts that are given are told from one another by their names. */
+function refuseParts({ scheduleId, parts }: BatchRequest): Refusal | null {
+  if (!parts) return null
+  if (scheduleId !== null) return malformed({ parts: batchRefusals.partsOfSchedule })
+  const isTwice = (names: readonly string[]) => new Set(names.map(name => name.toLocaleLowerCase('en'))).size < names.length
+  if (isTwice(parts.map(each => each.name))) return malformed({ parts: batchRefusals.sameParts })
+  const twice = parts.find(each => isTwice(each.faces))
+  return twice ? malformed({ parts: batchRefusals.sameFaces(twice.name) }) : null
 }
 
 function usesSolvent(tx: Transaction, studioId: number, versionIds: readonly number[]): boolean {
@@ -101,9 +115,11 @@ function orderFor(tx: Transaction, studioId: number, request: BatchRequest): num
   return open.id
 }
 
-function insertPiece(tx: Transaction, studioId: number, given: { batchId: number, name: string, ordinal: number, sizeUnits: number, areaM2: number | null }, edition: ScheduleEdition | null, actId: number, doneAt: number): number {
+interface NewPart { key: string, name: string, grip: string | null, faces: readonly { key: string, name: string }[] }
+
+function insertPiece(tx: Transaction, studioId: number, given: { batchId: number, name: string, ordinal: number, sizeUnits: number, areaM2: number | null }, parts: readonly NewPart[], actId: number, doneAt: number): number {
   const pieceId = tx.insert(piece).values({ studioId, ...given }).returning({ id: piece.id }).get().id
-  for (const each of edition?.parts ?? [{ ...wholePart, grip: null, faces: [] }]) {
+  for (const each of parts) {
     const partId = tx.insert(part).values({ studioId, pieceId, key: each.key, name: each.name, grip: each.grip }).returning({ id: part.id }).get().id
     if (each.faces.length > 0) tx.insert(face).values(each.faces.map(one => ({ studioId, partId, key: one.key, name: one.name }))).run()
     tx.insert(actSubject).values({ studioId, actId, partId, doneAt }).run()

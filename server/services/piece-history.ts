@@ -1,6 +1,7 @@
 import { asc, eq, inArray, or } from 'drizzle-orm'
 import { act, actSubject, part, touchTest } from '~~/db/schema'
 import { correctionReach } from '~~/server/services/acts'
+import { facesOfPieces } from '~~/server/services/faces'
 import { memberNames } from '~~/server/services/member-names'
 import { actDetails } from '~~/server/services/piece-names'
 import type { Membership } from '~~/server/services/sessions'
@@ -10,6 +11,7 @@ import type { FoldedPiece } from '~~/server/work/refold'
 import { may } from '#shared/permissions'
 import { actBodies } from '#shared/schemas/act'
 import type { ActLine } from '#shared/schemas/piece-detail'
+import type { FaceWire } from '#shared/schemas/piece-list'
 
 type ActRow = typeof act.$inferSelect
 interface Subject { actId: number, partId: number, pieceId: number, doneAt: number }
@@ -24,7 +26,9 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
   const chains = readChains(db, studioId, partIds)
   const subjects = readSubjects(db, studioId, chains.flat().map(row => row.id))
   const names = memberNames(db, studioId)
-  const details = actDetails(db, studioId, folded, chains.flat())
+  const sides = facesOfPieces(db, studioId, [folded.piece.id])
+  const told = actDetails(db, studioId, folded, chains.flat())
+  const details = (row: ActRow) => ({ ...told(row), on: toldOn(folded, row, subjects.filter(each => each.actId === row.id).map(each => each.partId), sides) })
   const forecasts = readForecasts(db, studioId, chains.map(chain => rootOf(chain[0])))
   const problems = new Map(folded.folded.problems.map(each => [each.actId, each.why]))
   return chains.flatMap((chain): ActLine[] => {
@@ -47,6 +51,15 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
       mayCorrect: inForce && last.kind in actBodies && last.doneAt >= now - correctionReach && (may(reader.role, 'correct acts of others') || last.memberId === reader.id),
     }]
   }).sort((a, b) => b.doneAt - a.doneAt || b.rootId - a.rootId)
+}
+
+/** Parts and faces that an act outside any schedule was about, by name; none where it was about the whole piece. */
+function toldOn({ parts, folded }: FoldedPiece, { kind, body }: ActRow, partIds: readonly number[], sides: readonly FaceWire[]): string[] {
+  if ((kind !== 'coat on' && kind !== 'glue-up on') || typeof body.step === 'string') return []
+  const own = parts.filter(each => partIds.includes(each.id))
+  const faceKeys = Array.isArray(body.faces) ? body.faces : []
+  const whole = parts.every(each => partIds.includes(each.id) || folded.joins.some(join => join.partId === each.id))
+  return [...whole ? [] : own.map(each => each.name), ...new Set(sides.filter(face => faceKeys.includes(face.key) && partIds.includes(face.partId)).map(face => face.name))]
 }
 
 const rootOf = (row: ActRow | undefined) => row?.rootActId ?? row?.id ?? 0

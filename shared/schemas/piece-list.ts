@@ -17,6 +17,12 @@ export const goneQuery = z.object({
   after: z._default(z.pipe(z.string().check(z.regex(/^\d{1,6}$/)), z.transform(Number)), 0),
 })
 
+/** A face of a part, as acts name it and as it is called. */
+export interface FaceWire { partId: number, key: string, name: string }
+
+/** GET /api/pieces/faces: at most 200 pieces, as an act may speak of; none named, none told. */
+export const facesQuery = z.object({ pieces: z._default(z.pipe(z.string(fields.pieceList).check(z.regex(/^([1-9]\d{0,9}(,[1-9]\d{0,9}){0,199})?$/, fields.pieceList)), z.transform((typed: string) => typed.split(',').filter(Boolean).map(Number))), []) })
+
 const name = (sentence: string) => z.object({ name: z.string(sentence).check(z.trim(), z.minLength(1, sentence), z.maxLength(60, sentence)) })
 
 /** What a piece or a batch is called from now on. */

@@ -35,6 +35,12 @@ export function readPiece(piece: PieceState, where: Whereabouts, now: number, he
   return { piece, verdict, groups, turns, next }
 }
 
+/** The parts that a verdict on several groups is about; none where it is about all of them. */
+export function speakingParts(groups: readonly ReadGroup[], { kind }: Verdict): string[] {
+  const own = groups.filter(each => each.verdict.kind === kind)
+  return own.length === groups.length ? [] : own.flatMap(({ group }) => group.parts.map(part => part.name))
+}
+
 function readTurn(piece: PieceState, turn: TurnState, where: Whereabouts, now: number, heardAt: number | null, who: Who | null): ReadTurn {
   const group = piece.groups.find(each => each.parts.some(part => turn.partIds.includes(part.partId)))
   const films = group?.films.filter(film => film.partIds.some(id => turn.partIds.includes(id))) ?? []

@@ -5,6 +5,10 @@ export const fields = {
   pieces: 'A batch has 1 to 60 pieces.',
   size: 'A piece takes 1 to 20 size units of a shelf.',
   area: 'The surface of a piece is more than 0 and at most 1000 m².',
+  pieceList: 'Name the pieces by their numbers, with commas between: 3,4. At most 200.',
+  partName: 'Give every part a name of 1 to 60 characters.',
+  faceName: 'Give every face a name of 1 to 40 characters.',
+  parts: 'A piece has 1 to 24 parts.',
   orderName: 'Give the order a name of 1 to 60 characters.',
 } as const
 
@@ -14,6 +18,9 @@ export const batchRefusals = {
   full: (place: string, free: number, wanted: number) => `${place} has room for ${free}; the batch needs ${wanted}. Choose another place or fewer pieces.`,
   sleptIn: (room: string) => `Somebody sleeps in ${room}. Work with solvents does not begin there.`,
   startTooOld: 'A batch begins at most 14 days back and 90 days ahead.',
+  partsOfSchedule: 'The schedule says what parts there are. Leave them out, or choose no schedule.',
+  sameParts: 'Two parts have the same name. Give each part its own.',
+  sameFaces: (part: string) => `Two faces of ${part} have the same name. Give each face its own.`,
   sameNames: 'Two pieces have the same name. Give each its own.',
 } as const
 

@@ -81,8 +81,8 @@ function limitsInShort(limits: Verdict['limits']): string[] {
 }
 
 /** A verdict as it stands under a swatch: "ask first: second varnish was due 14:00", "may be handled; do not stack yet". */
-export function swatchText(verdict: Verdict, clock: Clock): string {
-  const title = verdictTitle(verdict.kind, verdict.grip)
+export function swatchText(verdict: Verdict, clock: Clock, parts = ''): string {
+  const title = verdictTitle(verdict.kind, verdict.grip) + parts
   const unpromised = verdict.reason.code === 'wet' && verdict.reason.reason !== null
   const head = shown.includes(verdict.reason.code) && !unpromised ? title : `${title}: ${verdictReason(verdict.reason, clock)}`
   return [head, ...limitsInShort(verdict.limits)].join('; ')

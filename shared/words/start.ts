@@ -83,4 +83,4 @@ export const fullText = (place: string, free: number, wanted: number) => `${plac
 export const missedText = (step: string, opensAt: number, shutsAt: number, clock: Clock) => `The window for ${lowerFirst(step)}, ${clockTime(opensAt, clock)} to ${clockTime(shutsAt, clock)}, falls outside working hours.`
 
 /** On the page one comes to after the start. */
-export const startedText = (name: string, pieces: number) => `${name} has started: ${pieces === 1 ? 'one piece' : `${pieces} pieces`}. What it needs first stands below.`
+export const startedText = (name: string, pieces: number, scheduled = true) => `${name} has started: ${pieces === 1 ? 'one piece' : `${pieces} pieces`}. ${scheduled ? 'What it needs first stands below.' : 'Tell here what is put on.'}`

@@ -1,3 +1,4 @@
+import { listText } from '#shared/words/group'
 import type { ActKind, GoneWay, Hold, MilestoneName, StepKind } from '#shared/terms'
 
 /** A name in the middle of a line: "Second varnish" as "second varnish", but "PVA on the spine" as it is. */
@@ -91,6 +92,8 @@ export interface ActDetail {
   answer?: string | null
   gone?: GoneWay | null
   batch?: string | null
+  /** Parts and faces, where it was not about all of the piece. */
+  on?: string[]
 }
 
 /** What became of a piece, as a fact. */
@@ -143,5 +146,5 @@ export const takenBack = 'taken back'
 
 /** What somebody did, for the history of a piece: "coat on: second varnish", "tested: not yet dry to handle". */
 export function actText(kind: ActKind, detail: ActDetail = {}): string {
-  return history[kind](detail)
+  return history[kind](detail) + (detail.on?.length ? ` (${listText(detail.on.map(lowerFirst))})` : '')
 }

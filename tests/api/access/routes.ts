@@ -142,6 +142,7 @@ export const routes: Record<string, RouteCase> = {
   'calls/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ kind: 'ready', wanted: true }) },
 
   'pieces/marks.get.ts': { least: 'helper', apart: 'view' },
+  'pieces/faces.get.ts': { least: 'helper', apart: 'view' },
   'pieces/gone.get.ts': { least: 'helper', apart: 'view' },
   'pieces/[id].patch.ts': { least: 'maker', apart: 'row', at: 'piece', body: () => ({ name: 'Elsewhere 1' }) },
   'batches/[id].patch.ts': { least: 'maker', apart: 'row', at: 'batch', body: () => ({ name: 'Elsewhere' }) },
