@@ -19,6 +19,10 @@ export type ScheduleProblemCode =
  */
 export interface ScheduleProblem { code: ScheduleProblemCode, kind: 'refused' | 'caution', step: string | null, other: string | null, what: string | null, minutes: number | null, steps: string[] }
 
+/** What a draft only has not got yet, as every new one: to be done, not to be mended. */
+const missing: readonly ScheduleProblemCode[] = ['no name', 'no step', 'no part']
+export const isMissing = ({ code }: Pick<ScheduleProblem, 'code'>) => missing.includes(code)
+
 type Found = Partial<Omit<ScheduleProblem, 'code' | 'kind'>>
 const refused = (code: ScheduleProblemCode, found: Found = {}): ScheduleProblem => ({ code, kind: 'refused', step: null, other: null, what: null, minutes: null, steps: [], ...found })
 const caution = (code: ScheduleProblemCode, found: Found): ScheduleProblem => ({ ...refused(code, found), kind: 'caution' })

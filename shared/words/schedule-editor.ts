@@ -52,6 +52,8 @@ export const editorWords = {
   older: (of: number, no: number) => `This is edition ${of}. Saving makes it the newest, edition ${no + 1}.`,
   cannot: (count: number) => count === 1 ? '1 thing cannot be' : `${count} things cannot be`,
   know: (count: number) => count === 1 ? '1 thing to know' : `${count} things to know`,
+  toBegin: (count: number) => count === 1 ? '1 thing is still to do' : `${count} things are still to do`,
+  toBeginTitle: 'Still to do',
   cannotTitle: 'What cannot be',
   knowTitle: 'What to know',
   show: 'Show the step',

@@ -95,6 +95,29 @@ describe('a new material from its data sheet', () => {
   })
 })
 
+describe('a new tin of an own material', () => {
+  it('is told before anything was tested, asked once, and stays told', async () => {
+    const made = (await maker.post<{ id: number }>('/api/materials', { name: 'Tin paint', kind: 'paint', hardening: 'water', solvent: null, contents: [], mustLieLevel: false, gloves: false, hazards: '', figures: { 'ready-to-recoat': '2-4 h' } })).body
+    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, `/materials/${made.id}`)
+    await page.getByRole('button', { name: 'A new tin is open' }).click()
+    const ask = page.getByRole('dialog', { name: 'Is a new tin open?' })
+    expect(await axeProblems(page)).toEqual([])
+    await ask.getByRole('button', { name: 'A new tin is open' }).click()
+    await page.getByText(/^Newest tin /).waitFor()
+    await page.reload()
+    await page.getByText(/^Newest tin /).waitFor()
+    expect(problems).toEqual([])
+  })
+  it('is not a helper’s to tell', async () => {
+    const { page } = await openPage(browser, server.origin, {}, helper)
+    const paint = (await helper.get<{ id: number, name: string }[]>('/api/materials')).body.find(each => each.name === 'Tin paint')?.id ?? 0
+    await visit(page, `/materials/${paint}`)
+    await page.getByText(/^Newest tin /).waitFor()
+    expect(await page.getByRole('button', { name: 'A new tin is open' }).count()).toBe(0)
+  })
+})
+
 describe('a starter material', () => {
   it('is made ours by typing one figure over, says what changed, and goes back', async () => {
     const { page, problems } = await openPage(browser, server.origin, {}, maker)

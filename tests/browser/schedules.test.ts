@@ -196,3 +196,51 @@ describe('a helper', () => {
     await page.getByText('Makers and owners change finishing schedules.').waitFor()
   })
 })
+
+describe('an empty new schedule', () => {
+  it('says what to do, and speaks of what cannot be only once something was entered', async () => {
+    const { page } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, maker)
+    await visit(page, '/schedules/new')
+    await page.getByRole('link', { name: '2 things are still to do' }).waitFor()
+    await page.getByRole('heading', { name: 'Still to do' }).waitFor()
+    expect(await page.getByText('cannot be').count()).toBe(0)
+    await key(page, 'Save').click()
+    await page.getByRole('alert').filter({ hasText: '2 things are still to do' }).waitFor()
+    await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Wash boards')
+    await page.getByRole('link', { name: '1 thing is still to do' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.context().close()
+  })
+})
+
+describe('what was done alike three times', () => {
+  it('is offered on Put on to be kept, looked at, and kept as a schedule', async () => {
+    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    const { body: rooms } = await owner.get<{ places: { id: number }[] }[]>('/api/rooms')
+    await maker.post('/api/batches', { clientKey: 'offer-batch-1', name: 'Plaques', scheduleId: null, pieces: ['Plaque 1', 'Plaque 2', 'Plaque 3'], placeId: rooms[0]?.places[0]?.id, order: null, startsAt: new Date(Date.now() - 3_600_000).toISOString() })
+    await visit(page, '/put-on')
+    const offer = page.getByRole('heading', { name: 'Keep this as a finishing schedule?' })
+    for (const no of [1, 2, 3]) {
+      expect(await offer.count()).toBe(0)
+      await key(page, `Plaque ${no}`).click()
+      await page.getByRole('radio', { name: 'Acrylic gesso' }).check()
+      await key(page, 'Acrylic gesso is on').click()
+      await page.getByText(new RegExp(`Plaque ${no}`)).first().waitFor()
+    }
+    await offer.waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByText(/What is on Plaque \d was put on alike 3 times, without a schedule/).waitFor()
+    await page.getByRole('link', { name: 'Look at it and keep it' }).click()
+    await page.waitForURL(url => url.pathname === '/schedules/new' && url.searchParams.has('piece'))
+    await expect.poll(() => steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso')])
+    expect(await page.getByRole('textbox', { name: 'Name', exact: true }).inputValue()).toMatch(/Plaques/)
+    await key(page, 'Save').click()
+    await page.waitForURL(url => /^\/schedules\/\d+$/.test(url.pathname))
+    // Kept once, it is not offered again.
+    await visit(page, '/put-on')
+    await key(page, 'Plaque 1').waitFor()
+    expect(await offer.count()).toBe(0)
+    expect(problems).toEqual([])
+    await page.context().close()
+  })
+})
