@@ -30,7 +30,7 @@ function useOnParts(reads: ComputedRef<readonly ReadPiece[]>) {
     partNames.value = []
     faceNames.value = []
   }
-  return { partNames, faceNames, parts, sides, meant, failed, waits, again, named, wholeAgain }
+  return { partNames, faceNames, onParts, onFaces, parts, sides, meant, failed, waits, again, named, wholeAgain }
 }
 
 /** Everything "I put something on" remembers between its taps, and the telling at the end. */

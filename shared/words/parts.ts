@@ -1,3 +1,4 @@
+import { listText } from '#shared/words/group'
 import { lowerFirst } from '#shared/words/steps'
 
 /** Faces that one tap gives a part. */
@@ -47,6 +48,7 @@ export const partChoice = {
   all: 'All parts',
   faces: 'On which faces',
   allFaces: 'All over',
+  now: (parts: readonly string[], faces: readonly string[]) => `On ${[...parts.length === 0 ? [] : [listText(parts.map(lowerFirst))], ...faces.length === 0 ? [] : [listText(faces.map(lowerFirst))]].join(', ') || 'all of it'}: change`,
   failed: 'The faces could not be fetched. What you tell now counts for all of them.',
   waiting: 'Fetching the faces',
   begin: 'Something that is not here yet',

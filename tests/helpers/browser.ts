@@ -4,11 +4,11 @@ import type { Browser, BrowserContextOptions, Page } from 'playwright-core'
 import { findBrowser } from '../../scripts/ensure.mjs'
 import type { Visitor } from './sign-in'
 
-/** The system's Chromium, quiet: it asks nobody outside for anything. */
-export function openBrowser(): Promise<Browser> {
+/** The system's Chromium, quiet: it asks nobody outside for anything. `more` are switches beside ours. */
+export function openBrowser(more: readonly string[] = []): Promise<Browser> {
   const executablePath = findBrowser()
   if (!executablePath) throw new Error('There is no Chromium: run node scripts/ensure.mjs browser.')
-  return chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'] })
+  return chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync', ...more] })
 }
 
 export interface Watched {
