@@ -17,7 +17,7 @@ export function listRooms(db: Database, studioId: number): RoomWire[] {
 }
 
 /** Runs a write and turns what the database refuses into a sentence. */
-function orRefuse<T>(write: () => T, taken: string, stillUsed: string): T | Refusal {
+export function orRefuse<T>(write: () => T, taken: string, stillUsed: string): T | Refusal {
   try {
     return write()
   }
@@ -62,7 +62,7 @@ export function addPlace(db: Database, studioId: number, input: NewPlace): { ok:
 }
 
 /** What stands in a place now: its pieces by name, and the size units they take up. */
-function findStanding(tx: Transaction, studioId: number, placeId: number) {
+export function findStanding(tx: Transaction, studioId: number, placeId: number) {
   const rows = tx.selectDistinct({ id: piece.id, name: piece.name, size: piece.sizeUnits }).from(stay)
     .innerJoin(part, eq(part.id, stay.partId)).innerJoin(piece, eq(piece.id, part.pieceId))
     .where(scoped(stay, studioId, eq(stay.placeId, placeId), isNull(stay.toAt), isNull(piece.goneAt))).orderBy(piece.name).all()
@@ -73,8 +73,8 @@ export function changePlace(db: Database, studioId: number, id: number, patch: P
   return orRefuse(() => change(db, studioId, 'places', (tx): { ok: true } | Refusal => {
     if (!tx.select({ id: place.id }).from(place).where(owned(place, studioId, id)).get()) return absent(settings.placeAbsent)
     if (patch.roomId !== undefined && !hasRoom(tx, studioId, patch.roomId)) return absent(settings.roomAbsent)
-    const { size } = findStanding(tx, studioId, id)
-    if (patch.capacity !== undefined && patch.capacity < size) return conflict(settings.placeTooSmall(size), { size })
+    const { size, pieces } = findStanding(tx, studioId, id)
+    if (patch.capacity !== undefined && patch.capacity < size) return conflict(settings.placeTooSmall(size, pieces), { size })
     if (Object.keys(patch).length > 0) tx.update(place).set(patch).where(owned(place, studioId, id)).run()
     return { ok: true }
   }), settings.placeTaken(patch.name ?? ''), settings.placeHasHistory)

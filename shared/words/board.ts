@@ -7,6 +7,7 @@ import { lowerFirst } from '#shared/words/steps'
 import { verdictReason, verdictTitle } from '#shared/words/verdict'
 
 export const boardWords = {
+  arrange: 'Arrange on the drawing',
   title: 'Board',
   loading: 'Looking round the studio',
   failed: 'The studio did not answer.',
@@ -87,6 +88,9 @@ export function swatchText(verdict: Verdict, clock: Clock, parts = ''): string {
   const head = shown.includes(verdict.reason.code) && !unpromised ? title : `${title}: ${verdictReason(verdict.reason, clock)}`
   return [head, ...limitsInShort(verdict.limits)].join('; ')
 }
+
+/** The key that opens the reading of a tag. */
+export const scanKey = 'Scan a tag'
 
 /** ", spine" for a part that stands apart from its piece; ", 3 parts" for several that do. */
 export function partsSuffix(parts: readonly string[]): string {

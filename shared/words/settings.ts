@@ -20,7 +20,7 @@ export const settings = {
   roomHasHistory: 'Work has been done in this room, and its history names it. Rename it instead.',
   placeInUse: (pieces: readonly string[]) => `These stand here now: ${list(pieces)}. Move them first.`,
   placeHasHistory: 'Pieces have stood here, and their history names this place. Rename it instead.',
-  placeTooSmall: (needed: number) => `What stands here now takes up ${needed}. Move something first.`,
+  placeTooSmall: (needed: number, pieces: readonly string[]) => `What stands here now takes up ${needed}: ${list(pieces)}. Move something first.`,
   fireStays: 'Calls about fire cannot be switched off.',
   ownAbsenceOnly: 'You may set your own days off. Ask an owner for those of the studio.',
 } as const

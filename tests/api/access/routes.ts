@@ -120,6 +120,8 @@ export const routes: Record<string, RouteCase> = {
   'materials/recent.get.ts': { least: 'helper', apart: 'view' },
   'rates/index.get.ts': { least: 'helper', apart: 'view' },
   'places/index.post.ts': { least: 'maker', apart: 'named', body: place },
+  // An arrangement names all of a studio's own rooms and places; any other is a conflict with what stands there.
+  'places/arrangement.put.ts': { least: 'maker', apart: 'none', asLeast: 409, body: () => ({ was: [], now: [] }) },
   'places/[id].patch.ts': { least: 'maker', apart: 'row', at: 'place', body: () => ({ capacity: 8 }) },
   'places/[id].delete.ts': { least: 'maker', apart: 'row', at: 'place' },
   'carriers/index.get.ts': { least: 'helper', apart: 'view' },

@@ -49,7 +49,7 @@ describe('a place in use', () => {
   it('cannot shrink below what stands there', async () => {
     const answer = await owner.patch<Refused>(`/api/places/${shelf}`, { capacity: 1 })
     expect(answer.status).toBe(409)
-    expect(answer.body.data.message).toBe('What stands here now takes up 2. Move something first.')
+    expect(answer.body.data.message).toBe('What stands here now takes up 2: Ledger 1. Move something first.')
   })
   it('stays for the history\'s sake when the piece has moved on', async () => {
     closeStay()
