@@ -136,11 +136,11 @@ describe('the drawing of the studio', () => {
 
   it('lets nothing in use vanish, and names the pieces', async () => {
     const { page } = await open(maker)
-    await page.getByLabel('Places on Shelf A').fill('1')
+    await page.getByRole('textbox', { name: 'Places on Shelf A' }).fill('1')
     await page.getByRole('alert').filter({ hasText: 'Shelf A holds 2 now: Ledger 1 and Ledger 2. Move something first.' }).waitFor()
     expect(await axeProblems(page)).toEqual([])
     await key(page, 'Leave it as it was').click()
-    expect(await page.getByLabel('Places on Shelf A').inputValue()).toBe('6')
+    expect(await page.getByRole('textbox', { name: 'Places on Shelf A' }).inputValue()).toBe('6')
     await key(page, 'Take Shelf A away').click()
     await page.getByRole('dialog').getByRole('button', { name: 'Take away' }).click()
     await page.getByText('These stand here now: Ledger 1, Ledger 2. Move them first.').waitFor()
@@ -166,7 +166,7 @@ describe('the drawing of the studio', () => {
     await page.route('**/api/places/arrangement', route => route.abort())
     await key(page, 'Places on Clamps: more').click()
     await page.getByRole('alert').filter({ hasText: /\S/ }).waitFor()
-    expect(await page.getByLabel('Places on Clamps').inputValue()).toBe('5')
+    expect(await page.getByRole('textbox', { name: 'Places on Clamps' }).inputValue()).toBe('5')
     await page.unroute('**/api/places/arrangement')
     await key(page, 'Try again').click()
     await expect.poll(stands).toEqual([first[0], ['Loft', 'Clamps 5']])
