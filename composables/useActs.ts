@@ -1,5 +1,6 @@
 import type { ActRequest, TellableKind, VapourAnswers } from '#shared/schemas/act'
 import type { PieceState } from '#shared/schemas/piece-state'
+import type { Door } from '~/stores/studio'
 import type { Told } from '~/stores/untold'
 
 /** A fresh key for one tap. `randomUUID` is not there over plain http in a studio's network. */
@@ -12,6 +13,7 @@ export const newClientKey = () => Array.from(crypto.getRandomValues(new Uint8Arr
 export function useActs() {
   const untold = useUntoldStore()
   const studio = useStudioStore()
+  const door = (): Door => (untold.atBench ? { bench: '1' } : {})
   const busy = ref(false)
   const last = shallowRef<Told | null>(null)
 
@@ -25,7 +27,7 @@ export function useActs() {
     try {
       const act: ActRequest = { clientKey: newClientKey(), kind, doneAt: new Date(doneAt).toISOString(), pieces: pieces.map(({ id, version }) => ({ id, version })), body, ...partIds ? { partIds } : {}, ...vapour ? { vapour } : {} }
       last.value = await untold.tell(act)
-      if (last.value.outcome !== 'later') await studio.load()
+      if (last.value.outcome !== 'later') await studio.load(door())
       return last.value
     }
     finally {
@@ -39,8 +41,8 @@ export function useActs() {
    */
   async function correct(actId: number, change: { doneAt?: number, takeBack?: boolean, pieces?: number[] }): Promise<number> {
     const body = { clientKey: newClientKey(), ...change, ...change.doneAt === undefined ? {} : { doneAt: new Date(change.doneAt).toISOString() } }
-    const answer = await callApi<{ actId: number }>(`/api/acts/${actId}/correct`, { method: 'POST', body })
-    await studio.load()
+    const answer = await callApi<{ actId: number }>(`${untold.path}/${actId}/correct`, { method: 'POST', body })
+    await studio.load(door())
     return answer.actId
   }
 

@@ -5,17 +5,17 @@ import type { ActChoice } from '#shared/hands-acts'
 import type { Job } from '#shared/hands'
 import { solventRooms } from '#shared/solvent-rooms'
 import { filmStrip, withFirstShut, worstFilm } from '#shared/piece-strip'
-import { mayDoStep } from '#shared/permissions'
+import { may, mayDoStep } from '#shared/permissions'
 import { answeredAt } from '#shared/time'
 import type { TimeAnswer } from '#shared/time'
 import { handsWords, jobMoment, jobNames, jobTitle } from '#shared/words/hands'
+import type { ActDetail } from '#shared/words/steps'
 import { isUntold } from '#shared/verdict/untold'
 import { listText } from '#shared/words/group'
 
 /** One job on the page: its words, its strip, which of its pieces are meant, when it was done, and the telling. */
 export function useJob(job: ComputedRef<Job>) {
   const { say, busy, studio } = useTelling()
-  const { can } = useSession()
   const untold = useUntoldStore()
 
   const left = ref<number[]>([])
@@ -38,18 +38,18 @@ export function useJob(job: ComputedRef<Job>) {
     const who = studio.who.value
     const wet = solventRooms(studio.pieces.value.map(read => read.piece), studio.now.value)
     const solventRoom = job.value.pieces.some(({ read }) => read.piece.groups.some(group => group.roomId !== null && wet.has(group.roomId)))
-    return actsOf(job.value, { solventRoom, maker: can('start batches'), step: who ? mayDoStep(who.role, who.helperKinds, job.value.turn.step.kind) : false })
+    return actsOf(job.value, { solventRoom, maker: who ? may(who.role, 'start batches') : false, step: who ? mayDoStep(who.role, who.helperKinds, job.value.turn.step.kind) : false })
   })
   const isLater = computed(() => job.value.pieces.some(each => isUntold(each.read.piece.id, untold.acts)))
 
   /** Tells a choice about the pieces that are meant. True once it was told, kept or refused; the sheet says which. */
-  async function choose(act: ActChoice): Promise<boolean> {
+  async function choose(act: ActChoice, detail: ActDetail = {}): Promise<boolean> {
     const meant = job.value.pieces.filter(each => !left.value.includes(each.read.piece.id))
     problem.value = meant.length === 0 ? handsWords.noneChosen : when.value === null ? controlWords.timeWanted : null
     if (problem.value !== null || when.value === null || busy.value) return false
     const goes = placeId.value !== null && (act.kind === 'glue-up on' || act.kind === 'it is out') ? { placeId: placeId.value } : {}
     const partIds = act.perPart ? [...new Set(meant.flatMap(each => each.turn.turn.partIds))] : undefined
-    await say({ kind: act.kind, body: { ...act.body, ...goes }, pieces: meant.map(each => each.read.piece), doneAt: answeredAt(when.value, studio.now.value), partIds, step: job.value.turn.step.name })
+    await say({ kind: act.kind, body: { ...act.body, ...goes }, pieces: meant.map(each => each.read.piece), doneAt: answeredAt(when.value, studio.now.value), partIds, step: job.value.turn.step.name, detail })
     left.value = []
     when.value = { kind: 'ago', minutes: 0 }
     return true

@@ -1,5 +1,6 @@
 import { useEventListener, useIntervalFn } from '@vueuse/core'
 import type { Word } from '#shared/heard'
+import type { Door } from '~/stores/studio'
 
 /** Two beats and a little: a connection silent for so long is dead, whatever the browser thinks of it. ms. */
 const silentMs = 45_000
@@ -12,15 +13,15 @@ const slowestTryMs = 10_000
 /**
  * The studio's live word, taken up again by itself: after an error, after silence, and at once when the device wakes or
  * finds its network again. `open` while the connection stands; `word` null before the first.
- * @param wallToken for a wall tablet; otherwise the session opens the stream
+ * @param door what opens the stream
  */
-export function useLive(wallToken: string | null = null) {
+export function useLive(door: Door = {}) {
   const word = shallowRef<Word | null>(null)
   const open = ref(false)
   // On the server there is nothing to listen with, and nobody to tell.
   if (import.meta.server) return { word, open }
 
-  const url = wallToken === null ? '/api/live' : `/api/live?wall=${encodeURIComponent(wallToken)}`
+  const url = ['/api/live', new URLSearchParams(door).toString()].filter(Boolean).join('?')
   let source: EventSource | null = null
   let signAt = 0
   let tryMs = firstTryMs

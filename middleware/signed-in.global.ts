@@ -1,4 +1,4 @@
-const open = ['/sign-in', '/first-studio', '/join/', '/wall/', '/forgotten', '/reset/']
+const open = ['/sign-in', '/first-studio', '/join/', '/wall/', '/bench', '/forgotten', '/reset/']
 
 /** Every page but the doors asks who one is; the address one wanted is kept for afterwards. */
 export default defineNuxtRouteMiddleware(async (to) => {

@@ -3,13 +3,13 @@ import type { Role, StepKind } from '#shared/terms'
 /** Everything a route can ask leave for. `do steps` is granted to a helper kind by kind. */
 export const permissions = [
   'read the studio', 'record touch tests', 'move pieces', 'do steps', 'add readings', 'add photos', 'choose own calls', 'set own absences',
-  'start batches', 'promise dates', 'correct acts of others', 'pin the plan', 'edit places', 'edit materials', 'edit schedules', 'see private mixes', 'read the outbox',
+  'start batches', 'promise dates', 'correct acts of others', 'pin the plan', 'edit places', 'edit materials', 'edit schedules', 'set up tablets', 'see private mixes', 'read the outbox',
   'manage people', 'change settings', 'export', 'delete the studio',
 ] as const
 export type Permission = typeof permissions[number]
 
 const ofHelper: readonly Permission[] = ['read the studio', 'record touch tests', 'move pieces', 'do steps', 'add readings', 'add photos', 'choose own calls', 'set own absences']
-const ofMaker: readonly Permission[] = [...ofHelper, 'start batches', 'promise dates', 'correct acts of others', 'pin the plan', 'edit places', 'edit materials', 'edit schedules', 'see private mixes', 'read the outbox']
+const ofMaker: readonly Permission[] = [...ofHelper, 'start batches', 'promise dates', 'correct acts of others', 'pin the plan', 'edit places', 'edit materials', 'edit schedules', 'set up tablets', 'see private mixes', 'read the outbox']
 
 const granted: Record<Role, readonly Permission[]> = { owner: permissions, maker: ofMaker, helper: ofHelper }
 

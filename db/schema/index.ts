@@ -1,5 +1,6 @@
 export * from './studio'
 export * from './places'
+export * from './bench'
 export * from './materials'
 export * from './schedules'
 export * from './acts'

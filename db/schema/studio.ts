@@ -33,13 +33,15 @@ export const person = sqliteTable('person', {
   demo: flag('demo').notNull().default(false),
 }, t => [check('person_email_lower', sql`${t.email} = lower(${t.email})`)])
 
-/** A person's place in a studio. `pinHash` is for acting as oneself at a bench tablet. */
+/** A person's place in a studio. `pinHash` is for acting as oneself at a bench tablet; `pinWrong` counts wrong PINs since the last right one. */
 export const member = sqliteTable('member', {
   id: id(),
   studioId: studioColumn(),
   personId: integer('person_id').notNull().references(() => person.id, { onDelete: 'cascade' }),
   role: text('role').$type<Role>().notNull(),
   pinHash: text('pin_hash'),
+  pinWrong: integer('pin_wrong').notNull().default(0),
+  pinLockedTill: instant('pin_locked_till'),
   leftAt: instant('left_at'),
 }, t => [studioKey(t), unique().on(t.studioId, t.personId), oneOf('member_role', t.role, roles), index('member_of_person').on(t.personId)])
 
@@ -98,15 +100,6 @@ export const calendarLink = sqliteTable('calendar_link', {
   everybody: flag('everybody').notNull(),
   madeAt: instant('made_at').notNull(),
 }, t => [studioKey(t), belongsTo(t, t.memberId, member), unique().on(t.memberId)])
-
-export const benchTablet = sqliteTable('bench_tablet', {
-  id: id(),
-  studioId: studioColumn(),
-  name: text('name').notNull(),
-  tokenHash: text('token_hash').notNull().unique(),
-  madeAt: instant('made_at').notNull(),
-  revokedAt: instant('revoked_at'),
-}, t => [studioKey(t)])
 
 /** Working hours in local wall time, of the studio (member null) or of one person. Minutes since midnight. */
 export const openHours = sqliteTable('open_hours', {

@@ -18,12 +18,14 @@ import { editionOfStep } from '~~/server/work/newest-editions'
 import { insertAct, spreadAlong } from '~~/server/work/record'
 import type { Acting } from '~~/server/work/record'
 import { refold } from '~~/server/work/refold'
+import { needsPerson } from '#shared/bench/kinds'
 import { may, mayDoStep } from '#shared/permissions'
 import { actBodies } from '#shared/schemas/act'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import { describeIssues } from '#shared/schemas/describe'
 import type { StepKind } from '#shared/terms'
 import { actRefusals } from '#shared/words/acts'
+import { benchRefusals } from '#shared/words/bench-refusals'
 import { tagRefusals } from '#shared/words/tags'
 import type { ProblemCode } from '#shared/work/types'
 
@@ -119,12 +121,11 @@ export function checkTime(doneAt: number, now: number): Refusal | null {
 }
 
 const laying: readonly TellableKind[] = ['coat on', 'glue-up on']
-const benchKinds: readonly TellableKind[] = ['coat on', 'touch test', 'moved', 'it is out', 'seen']
 const workKinds: readonly TellableKind[] = ['began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'enough']
 const makerKinds: readonly TellableKind[] = ['stripped', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'gone', 'back', 'regrouped', 'cancelled', 'intake answered', 'air']
 
 function checkTeller(tx: Transaction, studioId: number, teller: Teller, kind: TellableKind, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
-  if (!('member' in teller)) return benchKinds.includes(kind) ? null : notAllowed()
+  if (!('member' in teller)) return needsPerson(kind) ? notAllowed(benchRefusals.wantsPerson) : null
   const { role, stepKinds } = teller.member
   if (kind === 'touch test') return may(role, 'record touch tests') ? null : notAllowed()
   if (makerKinds.includes(kind)) return may(role, 'start batches') ? null : notAllowed()

@@ -18,6 +18,7 @@ import { may } from '#shared/permissions'
 import { actBodies } from '#shared/schemas/act'
 import type { ActRequest, CorrectionRequest, TellableKind } from '#shared/schemas/act'
 import { actRefusals } from '#shared/words/acts'
+import { benchRefusals } from '#shared/words/bench-refusals'
 
 type ActRow = typeof act.$inferSelect
 type Subject = { partId: number, doneAt: number }
@@ -56,7 +57,10 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
 function findRefusal(tx: Transaction, studioId: number, teller: Teller, old: ActRow, was: readonly Subject[], request: CorrectionRequest, now: number): Refusal | null {
   if (!(old.kind in actBodies)) return impossible(actRefusals.batchStart)
   const member = 'member' in teller ? teller.member : null
-  if (!member || (old.memberId !== member.id && !may(member.role, 'correct acts of others'))) return notAllowed(actRefusals.ownActsOnly)
+  // At the bench nobody is known: it takes back or moves in time what it told itself, and no more.
+  const more = request.pieces ?? request.times ?? request.body
+  if (!member && (old.actor !== 'bench' || more !== undefined)) return notAllowed(benchRefusals.ownBench)
+  if (member && (old.memberId !== member.id && !may(member.role, 'correct acts of others'))) return notAllowed(actRefusals.ownActsOnly)
   const replaced = tx.select({ id: act.id }).from(act).where(scoped(act, studioId, eq(act.replacesActId, old.id))).get()
   if (replaced || old.voided) return conflict(actRefusals.corrected, pieceStates(tx, studioId, piecesOf(tx, studioId, was.map(each => each.partId))))
   const times = [old.doneAt, ...(request.doneAt ? [Date.parse(request.doneAt)] : []), ...(request.times ?? []).map(each => Date.parse(each.doneAt))]

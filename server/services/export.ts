@@ -19,7 +19,7 @@ type StudioTable = SQLiteTable & { studioId: AnySQLiteColumn }
 
 /** Doors into the studio and what went out through them: they open nothing elsewhere and must not be read by others. */
 const doors: ReadonlySet<string> = new Set(['session', 'invitation', 'wall_link', 'calendar_link', 'sensor_address', 'bench_tablet', 'subscription', 'delivery'])
-const secrets: ReadonlySet<string> = new Set(['pinHash'])
+const secrets: ReadonlySet<string> = new Set(['pinHash', 'pinWrong', 'pinLockedTill'])
 
 const isStudioTable = (value: unknown): value is StudioTable => is(value, SQLiteTable) && 'studioId' in value && !doors.has(getTableName(value))
 const studioTables: readonly StudioTable[] = Object.values<unknown>(schema).filter(isStudioTable)

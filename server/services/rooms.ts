@@ -1,5 +1,5 @@
 import { eq, isNull } from 'drizzle-orm'
-import { part, piece, place, planHold, reading, room, stay } from '~~/db/schema'
+import { benchTablet, part, piece, place, planHold, reading, room, stay } from '~~/db/schema'
 import { change, isDuplicate, isStillUsed } from '~~/server/utils/change'
 import { newTagCode } from '~~/server/services/tag-codes'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -47,6 +47,8 @@ export function removeRoom(db: Database, studioId: number, id: number): { ok: tr
     const places = tx.select({ name: place.name }).from(place).where(scoped(place, studioId, eq(place.roomId, id))).orderBy(place.sort).all()
     if (places.length > 0) return conflict(settings.roomHasPlaces(places.map(({ name }) => name)), { places })
     tx.delete(reading).where(scoped(reading, studioId, eq(reading.roomId, id))).run()
+    // A bench tablet in it shows all rooms from then on.
+    tx.update(benchTablet).set({ roomId: null }).where(scoped(benchTablet, studioId, eq(benchTablet.roomId, id))).run()
     tx.delete(room).where(owned(room, studioId, id)).run()
     return { ok: true }
   }), '', settings.roomHasHistory)

@@ -1,5 +1,6 @@
 import { and, eq, gt, isNull } from 'drizzle-orm'
-import { member, memberStepKind, person, session, studio, wallLink } from '~~/db/schema'
+import type { SQL } from 'drizzle-orm'
+import { benchTablet, member, memberStepKind, person, session, studio, wallLink } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { hashToken, newToken } from '~~/server/utils/token'
@@ -13,10 +14,13 @@ export interface SignedIn { id: number, name: string, email: string, demo: boole
 /** Their place in the studio they look at. */
 export interface Membership { id: number, role: Role, stepKinds: StepKind[] }
 
-/** Who a request comes from. Studio and member are null while a person belongs to none. */
-export interface Access { sessionHash: string | null, person: SignedIn | null, studio: StudioRow | null, member: Membership | null }
+/** A device signed in as the studio. `as` is whoever gave their PIN at it a moment ago; nobody while it is locked. */
+export interface Bench { id: number, name: string, roomId: number | null, lockMin: number, locked: boolean, as: (Membership & { name: string, till: number }) | null }
 
-export const nobody: Access = { sessionHash: null, person: null, studio: null, member: null }
+/** Who a request comes from. Studio and member are null while a person belongs to none; a bench tablet has a studio and no person. */
+export interface Access { sessionHash: string | null, person: SignedIn | null, studio: StudioRow | null, member: Membership | null, bench: Bench | null }
+
+export const nobody: Access = { sessionHash: null, person: null, studio: null, member: null, bench: null }
 
 const sessionDays = 60
 const day = 24 * 60 * 60 * 1000
@@ -39,9 +43,13 @@ export function revokeSession(db: Database, sessionHash: string, now: number): v
   db.update(session).set({ revokedAt: now }).where(and(eq(session.idHash, sessionHash), isNull(session.revokedAt))).run()
 }
 
-function findMembership(db: Database, personId: number, studioId: number): Membership | null {
-  const row = db.select({ id: member.id, role: member.role }).from(member)
-    .where(scoped(member, studioId, eq(member.personId, personId), isNull(member.leftAt))).get()
+const findMembership = (db: Database, personId: number, studioId: number) => membershipWhere(db, studioId, eq(member.personId, personId))
+
+/** A membership of this studio that has not ended, by its number. */
+export const membershipOf = (db: Database, studioId: number, memberId: number) => membershipWhere(db, studioId, eq(member.id, memberId))
+
+function membershipWhere(db: Database, studioId: number, which: SQL): Membership | null {
+  const row = db.select({ id: member.id, role: member.role }).from(member).where(scoped(member, studioId, which, isNull(member.leftAt))).get()
   if (!row) return null
   const kinds = row.role === 'helper'
     ? db.select({ kind: memberStepKind.kind }).from(memberStepKind).where(scoped(memberStepKind, studioId, eq(memberStepKind.memberId, row.id))).all()
@@ -61,7 +69,7 @@ export function readSession(db: Database, token: string, now: number): Access {
   if (now - row.seenAt > seenStep) db.update(session).set({ seenAt: now }).where(eq(session.idHash, sessionHash)).run()
   const membership = row.studioId === null ? null : findMembership(db, row.personId, row.studioId)
   const found = membership && row.studioId !== null ? db.select().from(studio).where(eq(studio.id, row.studioId)).get() ?? null : null
-  return { sessionHash, person: row.person, studio: found, member: found ? membership : null }
+  return { ...nobody, sessionHash, person: row.person, studio: found, member: found ? membership : null }
 }
 
 /** The studio a wall link shows, or null when the secret is unknown or revoked. */
@@ -85,8 +93,9 @@ export function switchStudio(db: Database, sessionHash: string, personId: number
   return true
 }
 
-/** Whether a live page's session or wall link, whichever opened it, still lets it see this studio. */
-export function stillAdmitted(db: Database, sessionHash: string | null, wallToken: string | null, studioId: number): boolean {
+/** Whether a live page's session, wall link or bench tablet, whichever opened it, still lets it see this studio. */
+export function stillAdmitted(db: Database, { sessionHash, bench }: Pick<Access, 'sessionHash' | 'bench'>, wallToken: string | null, studioId: number): boolean {
+  if (bench) return db.select({ id: benchTablet.id }).from(benchTablet).where(scoped(benchTablet, studioId, eq(benchTablet.id, bench.id), isNull(benchTablet.revokedAt))).get() !== undefined
   if (wallToken !== null) return readWallLink(db, wallToken)?.id === studioId
   const row = sessionHash === null
     ? undefined

@@ -13,6 +13,7 @@ import type { RoomRow } from '~~/server/work/rooms-of-parts'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { VapourAsked } from '#shared/schemas/vapour'
 import { isSolventBorne } from '#shared/vapour/facts'
+import { benchRefusals } from '#shared/words/bench-refusals'
 import { listText } from '#shared/words/group'
 import { startVapour } from '#shared/words/vapour-starts'
 
@@ -84,6 +85,8 @@ export function refuseVapour(tx: Transaction, studioId: number, memberId: number
   const starts = openStarts(tx, studioId)
   const asked = rooms.filter(each => !covers(starts.get(each.id), each, request.kind, now))
   if (asked.length === 0) return null
+  // Whoever begins opens the room again: a bench tablet without a name cannot.
+  if (memberId === null) return conflict(benchRefusals.solventWantsPerson, { ask: 'person' })
   if (!request.vapour) return conflict(startVapour.ask(listText(asked.map(each => each.name))), {
     ask: 'vapour', rooms: asked.map(({ id, name, outdoor, sprayArea }) => ({ id, name, outdoor, sprayArea })),
     cautions: cautionsOf([...asked.some(each => each.sprayArea) ? [{ name: '', cautions: ['phones'] }] : [], ...work.materials.map(each => ({ name: each.name ?? '', cautions: each.cautions }))]), rules: rulesOf(tx, studioId),

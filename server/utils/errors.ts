@@ -35,7 +35,7 @@ export const impossible = (message: string, fields?: Record<string, string>): Re
 export const malformed = (fields: Record<string, string>, message: string = refusals.malformed): Refusal => ({ ok: false, reason: 'malformed', message, fields })
 export const notAllowed = (message: string = refusals.notAllowed): Refusal => ({ ok: false, reason: 'not allowed', message })
 export const notSignedIn = (message: string = refusals.notSignedIn): Refusal => ({ ok: false, reason: 'not signed in', message })
-export const tooMany = (): Refusal => ({ ok: false, reason: 'too many', message: refusals.tooMany })
+export const tooMany = (message: string = refusals.tooMany): Refusal => ({ ok: false, reason: 'too many', message })
 
 export function isRefusal(value: unknown): value is Refusal {
   return typeof value === 'object' && value !== null && 'ok' in value && value.ok === false && 'reason' in value && typeof value.reason === 'string' && value.reason in statusOf

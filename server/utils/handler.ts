@@ -2,15 +2,17 @@ import { randomUUID } from 'node:crypto'
 import { createError, defineEventHandler, getQuery, getRouterParams, isError, readBody, setResponseHeader } from 'h3'
 import type { EventHandlerRequest, H3Event } from 'h3'
 import { core } from 'zod/mini'
-import type { Access, Membership, SignedIn, StudioRow } from '~~/server/services/sessions'
+import { readBench } from '~~/server/services/bench-access'
+import type { Access, Bench, Membership, SignedIn, StudioRow } from '~~/server/services/sessions'
 import { useDatabase } from '~~/server/utils/database'
 import type { Database } from '~~/server/utils/database'
 import { absent, isRefusal, malformed, notAllowed, notSignedIn, toHttp } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
-import { findAccess, findWallToken, readWall } from '~~/server/utils/session'
+import { asksAsBench, findAccess, findBenchToken, findWallToken, readWall } from '~~/server/utils/session'
 import { may } from '#shared/permissions'
 import type { Permission } from '#shared/permissions'
 import { describeIssues } from '#shared/schemas/describe'
+import { benchRefusals } from '#shared/words/bench-refusals'
 import { refusals } from '#shared/words/refusals'
 
 declare module 'h3' {
@@ -21,10 +23,10 @@ declare module 'h3' {
 }
 
 /**
- * Who may use a route: a permission of a member, anybody at all, anybody signed in (even without a studio),
- * or a wall link's bearer as well as every member.
+ * Who may use a route: a permission of a member, anybody at all, anybody signed in (even without a studio), a bench tablet,
+ * or a wall link's bearer as well as every member and every bench tablet.
  */
-export type May = Permission | 'anyone' | 'signed in' | 'wall'
+export type May = Permission | 'anyone' | 'signed in' | 'wall' | 'bench'
 
 interface Known { sessionHash: string, person: SignedIn }
 interface Within extends Known { studio: StudioRow, member: Membership }
@@ -33,7 +35,8 @@ type AccessFor<M extends May> =
   M extends 'anyone' ? Access
     : M extends 'signed in' ? Known & Pick<Access, 'studio' | 'member'>
       : M extends 'wall' ? Access & { studio: StudioRow }
-        : Within
+        : M extends 'bench' ? { studio: StudioRow, bench: Bench }
+          : Within
 
 type Schema = core.$ZodType
 type Parsed<S> = S extends Schema ? core.output<S> : undefined
@@ -68,13 +71,19 @@ const checkMember = ({ person, studio, member }: Access, permission: Permission)
 function checkAccess(access: Access, wanted: May): Refusal | null {
   if (wanted === 'anyone') return null
   if (wanted === 'signed in') return access.person ? null : notSignedIn()
+  if (wanted === 'bench') return access.bench ? null : notSignedIn(benchRefusals.notPaired)
   if (wanted === 'wall') return access.studio && !access.person ? null : checkMember(access, 'read the studio')
   return checkMember(access, wanted)
 }
 
-async function admit(event: H3Event, db: Database, wanted: May, now: number): Promise<Access> {
+function find(event: H3Event, db: Database, wanted: May, now: number): Access | null | Promise<Access> {
+  if (wanted === 'bench' || (wanted === 'wall' && asksAsBench(event))) return readBench(db, findBenchToken(event), now)
   const token = wanted === 'wall' ? findWallToken(event) : null
-  const access = token === null ? await findAccess(event, db, now) : readWall(db, token)
+  return token === null ? findAccess(event, db, now) : readWall(db, token)
+}
+
+async function admit(event: H3Event, db: Database, wanted: May, now: number): Promise<Access> {
+  const access = await find(event, db, wanted, now)
   const refusal = access ? checkAccess(access, wanted) : absent()
   if (refusal || !access) throw toHttp(refusal ?? absent())
   event.context.accessChecked = true

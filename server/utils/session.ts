@@ -1,5 +1,6 @@
 import { clearUserSession, getUserSession, replaceUserSession } from '#cookie-session'
-import { getQuery, getRouterParam } from 'h3'
+import { useRuntimeConfig } from 'nitropack/runtime'
+import { deleteCookie, getCookie, getQuery, getRouterParam, setCookie } from 'h3'
 import type { H3Event } from 'h3'
 import { nobody, readSession, readWallLink } from '~~/server/services/sessions'
 import type { Access } from '~~/server/services/sessions'
@@ -38,3 +39,23 @@ export function readWall(db: Database, token: string): Access | null {
   const studio = readWallLink(db, token)
   return studio && { ...nobody, studio }
 }
+
+const benchCookie = 'stillwet-bench'
+// The longest that browsers keep a cookie: a tablet is ended in the settings, not by time.
+const benchSeconds = 400 * 24 * 60 * 60
+
+/** Puts a bench tablet's secret into a cookie of its own, so that it never stands for a person. */
+export function rememberBench(event: H3Event, token: string) {
+  const { secure } = useRuntimeConfig(event).session.cookie as { secure: boolean }
+  setCookie(event, benchCookie, token, { httpOnly: true, sameSite: 'lax', secure, path: '/', maxAge: benchSeconds })
+}
+
+export function forgetBench(event: H3Event) {
+  deleteCookie(event, benchCookie, { path: '/' })
+}
+
+/** The secret of the bench tablet that asks, or null. */
+export const findBenchToken = (event: H3Event): string | null => getCookie(event, benchCookie) ?? null
+
+/** Whether a page asks as the bench tablet it runs on, whoever else is signed in at the same browser. */
+export const asksAsBench = (event: H3Event) => getQuery(event).bench === '1'

@@ -35,6 +35,7 @@ export const settingsLinks: readonly SettingsLink[] = [
   { to: '/settings/hours', label: 'Hours and days off', says: 'When hands are there', needs: 'read the studio' },
   { to: '/settings/people', label: 'People', says: 'Roles, what helpers do, invitations', needs: 'read the studio' },
   { to: '/settings/walls', label: 'Wall links', says: 'The handling sheet on a tablet, without an account', needs: 'change settings' },
+  { to: '/settings/tablets', label: 'Bench tablets', says: 'Tablets signed in as the studio, and your own PIN', needs: 'read the studio' },
   { to: '/settings/calls', label: 'Calls', says: 'What you are told and how', needs: 'read the studio' },
   { to: '/settings/installation', label: 'This installation', says: 'What plain http costs, mail, the outbox', needs: 'read the studio' },
 ]

@@ -26,7 +26,7 @@ export function visitor(origin: string): Visitor {
     if (body !== undefined) sent.set('content-type', file ? 'application/octet-stream' : 'application/json')
     if (cookie) sent.set('cookie', cookie)
     const response = await fetch(origin + path, { method, redirect: 'manual', headers: sent, body: body === undefined ? undefined : file ? new Uint8Array(body) : JSON.stringify(body) })
-    const given = response.headers.getSetCookie().find(line => line.startsWith('stillwet='))?.split(';')[0]
+    const given = response.headers.getSetCookie().find(line => /^stillwet(-bench)?=/.test(line))?.split(';')[0]
     if (given !== undefined) cookie = given
     const text = await response.text()
     const isJson = response.headers.get('content-type')?.includes('json')
@@ -64,4 +64,13 @@ export async function joinAs(origin: string, owner: Visitor, role: 'owner' | 'ma
   const { status } = await who.post(`/api${invited.body.path}`, { person: { name: email.split('@')[0], email, password: testPassword } })
   if (status !== 200) throw new Error(`Joining as ${role} was answered with ${status}.`)
   return who
+}
+
+/** A bench tablet of somebody's studio, signed in with a code; the visitor has a tablet's cookie and no person's. */
+export async function benchTabletOf(origin: string, maker: Visitor, name = 'Long bench', roomId: number | null = null, lockMin = 5): Promise<{ tablet: Visitor, id: number }> {
+  const made = await maker.post<{ id: number, code: string }>('/api/bench-tablets', { name, roomId, lockMin })
+  const tablet = visitor(origin)
+  const { status } = await tablet.post('/api/bench/pair', { code: made.body.code })
+  if (status !== 200) throw new Error(`Pairing the tablet was answered with ${status}.`)
+  return { tablet, id: made.body.id }
 }

@@ -86,6 +86,12 @@ describe('another studio\'s owner', () => {
   })
 })
 
+describe('a person\'s session', () => {
+  it.each(entries.filter(([, route]) => route.least === 'bench'))('opens nothing at %s', async (file, route) => {
+    expect((await ask(people.owner, file, route)).status).toBe(401)
+  })
+})
+
 describe('the lowest role that may', () => {
   // Deletions last and the place before its room, so that each still finds its row.
   const order = (file: string) => file.startsWith('members/') ? 3 : file.includes('.delete.') ? (file.startsWith('rooms/') ? 2 : 1) : 0

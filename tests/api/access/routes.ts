@@ -4,7 +4,7 @@ import type { Role } from '#shared/terms'
 
 export interface RouteCase {
   /** The lowest role that may, or a door that asks for none. */
-  least: Role | 'anyone' | 'signed in' | 'wall'
+  least: Role | 'anyone' | 'signed in' | 'wall' | 'bench'
   /** Fills [id], [code] or [token] of the path from the first studio. */
   at?: keyof Rows
   body?: (rows: Rows) => unknown
@@ -63,6 +63,24 @@ export const routes: Record<string, RouteCase> = {
   'wall-links/index.get.ts': { least: 'owner', apart: 'view' },
   'wall-links/index.post.ts': { least: 'owner', apart: 'view', body: () => ({ name: 'Door' }) },
   'wall-links/[id].delete.ts': { least: 'owner', apart: 'row', at: 'wallLink' },
+  'bench-tablets/index.get.ts': { least: 'maker', apart: 'view' },
+  'bench-tablets/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ name: 'Long bench', roomId: rows.room, lockMin: 5 }) },
+  'bench-tablets/[id].patch.ts': { least: 'maker', apart: 'row', at: 'benchTablet', body: () => ({ lockMin: 2 }) },
+  'bench-tablets/[id].delete.ts': { least: 'maker', apart: 'row', at: 'benchTablet' },
+  'own-pin/index.get.ts': { least: 'helper', apart: 'view' },
+  // Everybody sets and ends their own PIN and nobody another's.
+  'own-pin/index.put.ts': { least: 'helper', apart: 'view', body: () => ({ pin: '2580' }) },
+  'own-pin/index.delete.ts': { least: 'helper', apart: 'view' },
+  'bench/pair.post.ts': { least: 'anyone', apart: 'none', body: () => ({ code: 'CDFG-HJKM' }) },
+  // No session of a person opens these: a tablet's own cookie does, for its own studio. tests/api/bench.test.ts asks them with one.
+  'bench/index.get.ts': { least: 'bench', apart: 'none' },
+  'bench/person.post.ts': { least: 'bench', apart: 'none', body: () => ({ memberId: 1, pin: '2580' }) },
+  'bench/person.delete.ts': { least: 'bench', apart: 'none' },
+  'bench/awake.post.ts': { least: 'bench', apart: 'none' },
+  'bench/lock.post.ts': { least: 'bench', apart: 'none' },
+  'bench/leave.post.ts': { least: 'bench', apart: 'none' },
+  'bench/acts/index.post.ts': { least: 'bench', apart: 'none', body: rows => ({ clientKey: clientKey(), kind: 'seen', doneAt: recently(), pieces: [{ id: rows.piece, version: 1 }], body: {}, memberId: null }) },
+  'bench/acts/[id]/correct.post.ts': { least: 'bench', apart: 'none', at: 'act', body: () => ({ clientKey: clientKey(), takeBack: true }) },
   'hours/index.get.ts': { least: 'helper', apart: 'view' },
   'hours/index.put.ts': { least: 'owner', apart: 'named', body: rows => ({ memberId: rows.member, hours: [{ weekday: 1, fromMin: 540, toMin: 1020 }] }) },
   'closures/index.get.ts': { least: 'helper', apart: 'view' },

@@ -8,7 +8,7 @@ import type { Visitor } from '../../helpers/sign-in'
 export const marker = 'Firmark'
 
 /** Row numbers of the first studio, for the paths and bodies of the table. */
-export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, photo: number, witness: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
+export interface Rows { room: number, place: number, closure: number, invitation: number, member: number, wallLink: number, benchTablet: number, piece: number, act: number, schedule: number, reading: number, readingImport: number, ragDuty: number, reminder: number, rule: number, statement: number, batch: number, coat: number, photo: number, witness: number, turn: number, pin: number, subscription: number, material: number, ownMaterial: number, mix: number, sheetFile: number, carrier: number, tagCode: string, invitationToken: string, calendarToken: string, wallToken: string }
 
 export const roomOf = (name: string) => ({ name, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 
@@ -74,6 +74,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const closure = await made(owner, '/api/closures', { memberId: null, name: `${marker} holiday`, fromDate: '2030-05-01', toDate: '2030-05-03' })
   const invitation = await made(owner, '/api/invitations', { role: 'helper', email: `${marker.toLowerCase()}@example.test` })
   const wall = await made(owner, '/api/wall-links', { name: `${marker} tablet` })
+  const tablet = await made(owner, '/api/bench-tablets', { name: `${marker} bench`, roomId: room.id, lockMin: 5 })
   const calendar = await owner.put<{ path: string }>('/api/calendar', { everybody: true })
   const members = await owner.get<{ id: number, role: string }[]>('/api/members')
   const helper = members.body.find(({ role }) => role === 'helper')
@@ -101,7 +102,7 @@ export async function fillStudio(owner: Visitor, databaseFile: string): Promise<
   const planned = await owner.post<{ batchId: number }>('/api/batches', { clientKey: 'access-planned-batch', name: `${marker} bowls`, scheduleId: schedule.id, pieces: [`${marker} bowl`], placeId: place.id, order: null, startsAt: now() })
   const pinned = writePin(databaseFile, planned.body.batchId)
   const last = (path: string) => path.split('/').at(-1) ?? ''
-  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, piece, photo, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, carrier: carrier.id, tagCode: carriers.body[0]?.code ?? '', rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
+  return { room: room.id, place: place.id, closure: closure.id, invitation: invitation.invitation.id, member: helper.id, wallLink: wall.id, benchTablet: tablet.id, piece, photo, act: seen.body.actId, schedule: schedule.id, reading: reading.id, readingImport: imported.body.importId, subscription: subscription.id, material: material.id, ownMaterial: own.id, mix: mix.id, sheetFile: file.body.id, carrier: carrier.id, tagCode: carriers.body[0]?.code ?? '', rule: rule.id, statement: statement.id, batch: batch.body.batchId, ...calls, ...pinned, invitationToken: last(invitation.path), calendarToken: last(calendar.body.path), wallToken: last(wall.path) }
 }
 
 /** The owner of another studio on the same server, who belongs to no other. */
