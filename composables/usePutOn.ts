@@ -35,7 +35,8 @@ function useOnParts(reads: ComputedRef<readonly ReadPiece[]>) {
 
 /** Everything "I put something on" remembers between its taps, and the telling at the end. */
 export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling>, materials: Ref<RecentMaterialsWire | null>) {
-  const materialId = ref<number | null>(null)
+  // A key of the hands' page has said what it is.
+  const materialId = ref<number | null>(Number(useRoute().query.material) || null)
   const chosen = ref<number[]>(askedPieces(useRoute().query.pieces))
   const when = ref<TimeAnswer | null>({ kind: 'ago', minutes: 0 })
   const size = ref<CoatSize | null>('normal')

@@ -1,10 +1,10 @@
-import { eq } from 'drizzle-orm'
 import { existsSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
 import { isOpen } from './archive'
 import { Refused } from './settings'
-import { person, studio } from '~~/db/schema'
+import { studio } from '~~/db/schema'
 import { findDemo, seedDemo } from '~~/db/seed/demo'
+import { deleteDemo } from '~~/server/services/demo-studio'
 import type { Config } from '~~/server/utils/config'
 import { prepareDatabase } from '~~/server/utils/database'
 import type { Database } from '~~/server/utils/database'
@@ -42,10 +42,7 @@ export function removeDemo(settings: Settings, now: number): Promise<string> {
   return alone(settings, now, (db) => {
     const found = findDemo(db)
     if (found === null) throw new Refused('There is no demo studio.')
-    db.transaction((tx) => {
-      tx.delete(studio).where(eq(studio.id, found)).run()
-      tx.delete(person).where(eq(person.demo, true)).run()
-    })
+    deleteDemo(db, found)
     rmSync(join(settings.storageFolder, String(found)), { recursive: true, force: true })
     const left = db.select({ id: studio.id }).from(studio).limit(1).all().length
     return `The demo studio is removed.${left === 0 ? ' No studio is left: set STILLWET_DEMO=0, or the next start makes it again.' : ''}`

@@ -1,6 +1,7 @@
 import { askerOf } from '~~/server/planning/questions'
 import { reckonPromises, savesPromise } from '~~/server/planning/promise-watch'
 import type { Search } from '~~/server/planning/search'
+import { demoRows } from '~~/server/services/demo-rows'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
 import type { KeptBases } from '~~/server/services/plan-questions'
 import { checkPin } from '~~/server/services/pins'
@@ -25,6 +26,7 @@ export const answers = {
   'date': ({ db, now, search }: Asked, { studioId, batchId }: OfStudio & { batchId: number }) => promiseState(db, studioId, batchId, now, search),
   'promises': ({ db, now, search }: Asked, { studioId }: OfStudio) => reckonPromises(db, studioId, now, search),
   'rescue': ({ db, now, search }: Asked, { studioId, orderId, batchId }: OfStudio & { orderId: number, batchId: number }) => savesPromise(db, studioId, orderId, batchId, now, search),
+  'demo': ({ db, now }: Asked, { zone }: { zone: string }) => demoRows(db, now, zone),
   'pin': ({ db, now, search }: Asked, { studioId, body }: OfStudio & { body: PinBody }) => checkPin(db, studioId, body, now, search),
 }
 

@@ -2,6 +2,7 @@ import { Worker } from 'node:worker_threads'
 import { answerTo } from '~~/server/asking/answers'
 import type { Answer, Kind, Question } from '~~/server/asking/answers'
 import type { AskReply, AskRequest } from '~~/server/asking/worker'
+import type { DemoRows } from '~~/server/services/demo-rows'
 import { searchUnder } from '~~/server/planning/search'
 import type { KeptBases } from '~~/server/services/plan-questions'
 import type { Database } from '~~/server/utils/database'
@@ -110,6 +111,22 @@ let shared: Asker | null = null
 
 /** The process's own: a worker thread in the built server, this thread in development. */
 export function useAsker(): Asker {
-  shared ??= new Asker({ worker: import.meta.dev === false ? new URL('./asking-worker.mjs', import.meta.url) : null })
+  shared ??= new Asker({ worker: workerFile() })
   return shared
+}
+
+const workerFile = () => (import.meta.dev === false ? new URL('./asking-worker.mjs', import.meta.url) : null)
+/** Playing the demo's weeks takes seconds on a quick machine, a minute on a slow one. ms. */
+const demoPatience = 5 * 60_000
+let making: Promise<DemoRows | null | Refusal> | null = null
+
+/** The rows of a new demo studio, from a worker of its own, so that no question to the plan waits for it. Who asks meanwhile gets the same. */
+export function makeDemoRows(db: Database, zone: string, now: number): Promise<DemoRows | null | Refusal> {
+  if (making !== null) return making
+  const apart = new Asker({ worker: workerFile(), patience: demoPatience })
+  making = apart.ask(db, 'demo', { zone }, now).finally(() => {
+    making = null
+    return apart.close()
+  })
+  return making
 }

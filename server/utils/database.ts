@@ -53,6 +53,13 @@ export function copyOf(file: string): Database {
   const given = new Sqlite(file, { readonly: true, fileMustExist: true })
   const bytes = given.serialize()
   given.close()
+  return inMemory(bytes)
+}
+
+/** The same of a database that is open already, one in memory too. */
+export const copyAgain = (db: Database): Database => inMemory(db.$client.serialize())
+
+function inMemory(bytes: Buffer): Database {
   for (const at of journalBytes) bytes[at] = 1
   return drizzle(new Sqlite(bytes), { schema })
 }

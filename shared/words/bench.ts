@@ -19,7 +19,6 @@ export const benchWords = {
   list: 'What wants hands here',
   current: 'At hand',
   feel: (names: string) => `Feel ${names}`,
-  moved: 'Moved it',
   movedTitle: 'Where is it now?',
   empty: 'Nothing wants hands here now',
   emptySays: 'What is drying stands below with what may be handled.',

@@ -27,6 +27,7 @@ export const boardWords = {
   folded: (count: number) => `${count} alike`,
   unfold: 'Show them one by one',
   fresh: 'See anew',
+  noteAir: 'Note the air',
 } as const
 
 /** What the drawing means, for whoever stands before it for the first time. */
@@ -119,6 +120,7 @@ export const pieceSheetWords = {
   steps: 'What comes next',
   parts: 'Part by part',
   whole: 'Everything about this piece',
+  move: (batch: string) => `Move ${batch}`,
   bare: 'Nothing on it that still changes.',
   where: (place: string, room: string) => `${place}, ${room}`,
   done: (done: number, of: number) => `${done} of ${of} steps done`,

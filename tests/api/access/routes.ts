@@ -81,6 +81,10 @@ export const routes: Record<string, RouteCase> = {
   'bench/leave.post.ts': { least: 'bench', apart: 'none' },
   'bench/acts/index.post.ts': { least: 'bench', apart: 'none', body: rows => ({ clientKey: clientKey(), kind: 'seen', doneAt: recently(), pieces: [{ id: rows.piece, version: 1 }], body: {}, memberId: null }) },
   'bench/acts/[id]/correct.post.ts': { least: 'bench', apart: 'none', at: 'act', body: () => ({ clientKey: clientKey(), takeBack: true }) },
+  // The invented studio is nobody's of these until one of them adds it: then it is theirs to take away (tests/api/demo.test.ts).
+  'demo/index.get.ts': { least: 'owner', apart: 'view' },
+  'demo/index.post.ts': { least: 'owner', apart: 'none' },
+  'demo/index.delete.ts': { least: 'owner', apart: 'none' },
   'hours/index.get.ts': { least: 'helper', apart: 'view' },
   'hours/index.put.ts': { least: 'owner', apart: 'named', body: rows => ({ memberId: rows.member, hours: [{ weekday: 1, fromMin: 540, toMin: 1020 }] }) },
   'closures/index.get.ts': { least: 'helper', apart: 'view' },
