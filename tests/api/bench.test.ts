@@ -85,6 +85,15 @@ describe('setting a tablet up', () => {
     expect((await helper.post('/api/bench-tablets', { name: 'x', roomId: null, lockMin: 5 })).status).toBe(403)
   })
 
+  it('shows all rooms once its own is taken away', async () => {
+    const room = body(await owner.post<{ id: number }>('/api/rooms', { name: 'Box room', heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 20, exhaustM3H: null, nightDropC: 4, sort: 2 }))
+    const { tablet } = await benchTabletOf(server.origin, maker, 'Box bench', room.id)
+    const roomId = async () => body(await tablet.get<{ roomId: number | null }>('/api/bench')).roomId
+    expect(await roomId()).toBe(room.id)
+    expect((await owner.delete(`/api/rooms/${room.id}`)).status).toBe(200)
+    expect(await roomId()).toBeNull()
+  })
+
   it('opens nothing any more once it is ended', async () => {
     const { tablet, id } = await benchTabletOf(server.origin, maker)
     expect((await tablet.get('/api/bench')).status).toBe(200)
