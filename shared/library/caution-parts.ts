@@ -11,6 +11,7 @@ export const cautionParts = {
   noWarmAir: 'No heater and no warm air while the film is wet.',
   phonesOut: 'Phones, tablets and chargers stay out of the spray area.',
   phonesSpark: 'They can spark, and they are not made for vapour.',
+  devicesSpark: 'Phones, tablets and chargers can spark, and they are not made for vapour.',
   noseTires: 'Your nose is no guide: it tires, and some vapour has no smell.',
   /** What is asked of whoever looks into a shut room. */
   lookIn: 'Exhaust on? Smell or stinging: stay out.',

@@ -80,7 +80,7 @@ const whereIs = ({ code, rooms }: SprayWarning) => {
 
 export const sprayWords = {
   title: 'Take this tablet out of the vapour',
-  says: (warning: SprayWarning) => `${whereIs(warning)} ${cautionParts.phonesOut} ${cautionParts.phonesSpark}`,
+  says: (warning: SprayWarning) => `${whereIs(warning)} ${warning.code === 'spray' ? `${cautionParts.phonesOut} ${cautionParts.phonesSpark}` : cautionParts.devicesSpark}`,
   unplug: 'Take the charger out too, at a socket outside the room. Follow the product’s safety data sheet and your local rules.',
   later: 'Record what you did when you come out: every act takes a time.',
   answers: { out: 'I take it out now', elsewhere: 'It stands elsewhere' },

@@ -292,7 +292,7 @@ describe('a tablet left alone', () => {
     const shown = await page.locator('body').innerText()
     expect(shown).toContain('Caskets 1 and 2')
     expect(shown).not.toMatch(/Casket batch|paint|moss|hazel/i)
-    await expect.poll(async () => JSON.stringify((await tablet.get('/api/state?bench=1')).body)).not.toMatch(/Casket batch|First paint/)
+    expect(JSON.stringify((await tablet.get('/api/state?bench=1')).body)).not.toMatch(/Casket batch|Chalk-type paint|moss|hazel/)
   })
 
   it('in a spray room asks to be taken out before anything else, and asks again', async () => {
