@@ -41,7 +41,7 @@ export function provideBench() {
   const as = computed(() => (locked.value ? null : tablet.value?.as ?? null))
   /** Without a name a bench does every kind of step that it may tell; under a name what that person may. */
   const who = computed((): Who => (as.value ? { role: as.value.role, helperKinds: as.value.stepKinds, equipped: false, memberId: as.value.memberId } : { role: 'helper', helperKinds: stepKinds, equipped: false }))
-  const personTill = ref<number | null>(null)
+  const personTill = ref<number | null>(as.value ? Date.parse(as.value.till) : null)
 
   untold.atBench = true
   watchEffect(() => { untold.memberId = as.value?.memberId ?? null })

@@ -3,6 +3,7 @@ import { pairMinutes } from '#shared/bench/code'
 import { pinLength } from '#shared/bench/pin'
 import type { SprayWarning } from '#shared/bench/spray'
 import { cautionParts } from '#shared/library/caution-parts'
+import { cautionDeferral } from '#shared/library/cautions'
 import { listText } from '#shared/words/group'
 
 /** What a bench tablet says. */
@@ -81,7 +82,7 @@ const whereIs = ({ code, rooms }: SprayWarning) => {
 export const sprayWords = {
   title: 'Take this tablet out of the vapour',
   says: (warning: SprayWarning) => `${whereIs(warning)} ${warning.code === 'spray' ? `${cautionParts.phonesOut} ${cautionParts.phonesSpark}` : cautionParts.devicesSpark}`,
-  unplug: 'Take the charger out too, at a socket outside the room. Follow the product’s safety data sheet and your local rules.',
+  unplug: `Take the charger out too, to a socket outside the room. ${cautionDeferral}`,
   later: 'Record what you did when you come out: every act takes a time.',
   answers: { out: 'I take it out now', elsewhere: 'It stands elsewhere' },
   returns: 'This comes back while the room is as it is.',
