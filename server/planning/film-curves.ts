@@ -2,6 +2,7 @@ import type { FilmToCome } from '~~/server/planning/waits'
 import { bandZ, chances } from '#shared/drying/doubt'
 import type { QuantileTable } from '#shared/drying/doubt'
 import type { PreparedMaterial } from '#shared/drying/material'
+import { normalQuantile } from '#shared/drying/normal'
 import { predictCoat } from '#shared/drying/predict'
 import { extraVariance, groundVariance, staleVariance } from '#shared/drying/solve'
 import type { CoatPrediction } from '#shared/drying/types'
@@ -71,7 +72,7 @@ export class FilmCurves {
   #extra = (film: FilmToCome) => extraVariance(film.material, film.coat, film.spans) + airToCome
 }
 
-const plainly: Spread = { kind: 'score', mean: 0, spread: 1, bench: Math.sqrt(lyingShared), own: Math.sqrt(1 - lyingShared), middle: 0, late: 1, early: 1 }
+const plainly: Spread = { kind: 'score', bench: Math.sqrt(lyingShared), own: Math.sqrt(1 - lyingShared), points: chances.map(normalQuantile) }
 const scores = Array.from({ length: 29 }, (_, i) => -3 + i * 0.25)
 const lyingCurve = (endedAt: number, zeroAt: number, ln: (score: number) => number): DoubtfulWait => ({ spread: plainly, curve: { from: -3, step: 0.25, minutes: scores.map(score => (endedAt + Math.exp(ln(score)) - zeroAt) / minute) } })
 

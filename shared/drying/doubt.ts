@@ -1,4 +1,6 @@
 import type { Milestone } from '#shared/drying/types'
+import type { Mixture } from '#shared/drying/mixture'
+import { mixtureQuantile, normalPoint } from '#shared/drying/mixture'
 import { density, normal, normalQuantile } from '#shared/drying/normal'
 
 /** One side of a 10-90 % band, in standard deviations. */
@@ -130,44 +132,41 @@ export function sheetScale(table: QuantileTable): SheetScale {
   return { middle: fifty, late: (ninety - fifty) / bandZ, early: (fifty - ten) / bandZ }
 }
 
-/** What a bench's tests make of a rung: a mixture of normals on the sheet's own scale (0 its middle, 1 its sd). */
-export interface RungLearned { parts: readonly { weight: number, mean: number, variance: number }[] }
+/** What a bench's tests make of a rung: scores on the sheet's own scale (0 its middle, 1 its sd). */
+export interface RungLearned { parts: Mixture }
 
-/**
- * The score of a chance: the divisions' own quantiles averaged by their weights, every part widened by `extra`. Not the quantile of the
- * mixture: it is one sum instead of a search, and a division that is all but ruled out does not own the far tail.
- */
-function pooledScore(parts: RungLearned['parts'], p: number, extra: number): number {
-  const z = normalQuantile(p)
-  return parts.reduce((sum, { weight, mean, variance }) => sum + weight * (mean + z * Math.sqrt(variance + extra)), 0)
+/** How far the tests move a chance's ln time from the sheet's, at each extra variance: nothing while they say nothing. */
+function learnedMoves({ parts }: RungLearned, scale: SheetScale, p: number, extras: readonly number[]): number[] {
+  let near = 0
+  return extras.map((extra) => {
+    near = mixtureQuantile(parts, scale, p, extra, near)
+    return near - normalPoint(scale, p, extra)
+  })
 }
 
 /** Extra sd at which a learned table is worked out; between them it is straight. */
 const learnedSds = [0, 0.1, 0.2, 0.4, 0.8] as const
+const learnedExtras = learnedSds.map(sd => sd * sd)
 
-/** The table of a rung as its bench has it: the sheet's scale, read at the bench's own scores. */
+/** The table of a rung as its bench has it: the sheet's, moved by what the tests say. */
 export function learnedTable(sheet: QuantileTable, { parts }: RungLearned): QuantileTable {
   const scale = sheetScale(sheet)
-  const values = chances.map((p) => {
-    const plain = pooledScore(parts, p, 0)
-    const side = plain > 0 ? scale.late : scale.early
-    const at = learnedSds.map(sd => scale.middle + side * pooledScore(parts, p, (sd / side) ** 2))
+  const values = chances.map((p, chance) => {
+    const moves = learnedMoves({ parts }, scale, p, learnedExtras)
     let under = 0
-    return Float64Array.from({ length: extraSteps + 1 }, (_, i) => {
+    return sheet.values[chance]!.map((plain, i) => {
       const sd = Math.sqrt(i * extraStep)
       while (under < learnedSds.length - 2 && learnedSds[under + 1]! < sd) under++
       const share = (sd - learnedSds[under]!) / (learnedSds[under + 1]! - learnedSds[under]!)
-      return at[under]! + (at[under + 1]! - at[under]!) * share
+      return plain + moves[under]! + (moves[under + 1]! - moves[under]!) * share
     })
   })
   return { doubt: sheet.doubt, values, learned: { parts, scale } }
 }
 
 function beyondTable({ doubt, learned }: QuantileTable, chance: Chance, extra: number): number {
-  if (!learned) return quantile(chances[chance], doubt, extra)
-  const { parts, scale } = learned
-  const side = pooledScore(parts, chances[chance], 0) > 0 ? scale.late : scale.early
-  return scale.middle + side * pooledScore(parts, chances[chance], extra / (side * side))
+  const plain = quantile(chances[chance], doubt, extra)
+  return learned ? plain + learnedMoves(learned, learned.scale, chances[chance], [extra])[0]! : plain
 }
 
 /** The x of a chance at an extra variance, by linear interpolation; worked out afresh beyond the table. */

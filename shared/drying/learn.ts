@@ -2,6 +2,7 @@ import type { QuantileTable, SheetScale } from '#shared/drying/doubt'
 import { bandZ, sheetScale } from '#shared/drying/doubt'
 import type { BenchSpeed, SpeedBand } from '#shared/drying/material'
 import { sheetSpeed } from '#shared/drying/material'
+import type { Mixture } from '#shared/drying/mixture'
 import { normal } from '#shared/drying/normal'
 
 /** A touch test on its rung's clock, made ready for learning: a bound, not a time. */
@@ -20,22 +21,22 @@ export interface BenchTest {
 
 /**
  * How a sheet's doubt may be divided, on the scale of its own band (1 is its sd): `bench` is the same for every coat here, `coat` is each
- * coat's own. An even bench that the sheet misjudges; one whose coats scatter as the sheet says; one that is not the sheet's at all. The
- * first two say of an untested rung what the sheet says, so that evidence alone chooses. Weights come from the harness's two tuned worlds.
+ * coat's own. An even bench that the sheet misjudges; one whose coats scatter as the sheet says; one half-way. Each adds up to the
+ * sheet's own band, so that only evidence over several coats chooses. The two readings of a sheet weigh the same, what lies between them a tenth.
  */
 const divisions = [
-  { bench: Math.sqrt(0.97), coat: Math.sqrt(0.03), weight: 0.38 },
-  { bench: 0, coat: 1.02, weight: 0.6 },
-  { bench: 2.5, coat: 0.6, weight: 0.02 },
+  { bench: Math.sqrt(0.97), coat: Math.sqrt(0.03), weight: 0.45 },
+  { bench: 0, coat: 1, weight: 0.45 },
+  { bench: Math.sqrt(0.5), coat: Math.sqrt(0.5), weight: 0.1 },
 ] as const
 
 /** Share of answers that say nothing: odd coats, slips of the thumb. Either answer then is as good as the other. */
 const oddShare = 0.03
 
-const gridEnd = 5
-const gridStep = 0.25
+const gridEnd = 5.5
+const gridStep = 0.22
 /** Offsets of a bench in units of a division's `bench`, and the ln of their standard normal prior. */
-const grid = Float64Array.from({ length: 2 * gridEnd / gridStep + 1 }, (_, i) => i * gridStep - gridEnd)
+const grid = Float64Array.from({ length: Math.round(2 * gridEnd / gridStep) + 1 }, (_, i) => i * gridStep - gridEnd)
 const prior = grid.map(u => -u * u / 2)
 /** ln of the grid's own sum, so that evidence with no test is 0. */
 const priorEvidence = Math.log(prior.reduce((sum, p) => sum + Math.exp(p), 0))
@@ -50,23 +51,21 @@ function answerLog({ log, reached, weight, extra }: BenchTest, { middle, late, e
   return weight * Math.log((1 - oddShare) * normal(((log - middle) / side - score) / sd) + oddShare / 2)
 }
 
-/** What the tests of one rung make of its offset under one division: ln of prior and likelihood along the grid, and the offset's mean and variance. */
-interface Posterior { logs: Float64Array, mean: number, variance: number }
+/** Adds to `logs`, along the grid, what tests of one rung say of its offset under one division. */
+function told(logs: Float64Array, tests: readonly BenchTest[], scale: SheetScale, { bench, coat }: typeof divisions[number]): Float64Array {
+  if (bench === 0) return logs
+  return logs.map((log, i) => tests.reduce((sum, each) => sum + answerLog(each, scale, bench * grid[i]!, coat * coat), log))
+}
 
-function posterior(tests: readonly BenchTest[], scale: SheetScale, { bench, coat }: typeof divisions[number]): Posterior {
-  const logs = prior.slice()
-  for (const each of tests) for (let i = 0; i < grid.length; i++) logs[i] = logs[i]! + answerLog(each, scale, bench * grid[i]!, coat * coat)
+/** Chances of a rung's offsets along the grid, their mean and their variance. */
+interface Posterior { chances: Float64Array, mean: number, variance: number }
+
+function posterior(logs: Float64Array): Posterior {
   const top = Math.max(...logs)
-  let mass = 0
-  let first = 0
-  let second = 0
-  for (let i = 0; i < grid.length; i++) {
-    const p = Math.exp(logs[i]! - top)
-    mass += p
-    first += p * grid[i]!
-    second += p * grid[i]! ** 2
-  }
-  return { logs, mean: first / mass, variance: Math.max(1e-6, second / mass - (first / mass) ** 2) }
+  const raw = logs.map(log => Math.exp(log - top))
+  const mass = raw.reduce((sum, p) => sum + p, 0)
+  const mean = raw.reduce((sum, p, i) => sum + p * grid[i]!, 0) / mass
+  return { chances: raw.map(p => p / mass), mean, variance: raw.reduce((sum, p, i) => sum + p * (grid[i]! - mean) ** 2, 0) / mass }
 }
 
 /** ln of the mean of two chances given by their ln. */
@@ -100,8 +99,8 @@ function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale 
  * Chances of the divisions given all tests: how even a bench is shows on every rung it tests. Rungs often go together, on a bench and on a coat, and sometimes do not:
  * each division weighs both. Counted test by test alone, a coat tested on five rungs would speak five times.
  */
-function weighed(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], rungs: readonly (readonly Posterior[])[]): number[] {
-  const logs = divisions.map(({ bench, coat, weight }, d) => Math.log(weight) + (bench === 0 ? coatEvidence(tests, scales, coat) : benchEvidence(rungs.map(own => own[d]!.logs))))
+function weighed(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], rungs: readonly (readonly Float64Array[])[]): number[] {
+  const logs = divisions.map(({ bench, coat, weight }, d) => Math.log(weight) + (bench === 0 ? coatEvidence(tests, scales, coat) : benchEvidence(rungs.map(own => own[d]!))))
   const best = Math.max(...logs)
   const raw = logs.map(log => Math.exp(log - best))
   const all = raw.reduce((sum, w) => sum + w, 0)
@@ -109,10 +108,10 @@ function weighed(tests: readonly BenchTest[], scales: readonly (SheetScale | nul
 }
 
 /** Of what a bench's tests leave in doubt about a rung, the share that all its coats have in common, 0..1; the rest is each coat's own. `parts` as `learnBench` made them. */
-export function benchShare(parts: readonly { weight: number, variance: number }[]): number {
-  const all = parts.reduce((sum, part) => sum + part.weight * part.variance, 0)
-  const own = parts.reduce((sum, part, d) => sum + part.weight * Math.min(part.variance, (divisions[d]?.coat ?? 0) ** 2), 0)
-  return all > 0 ? 1 - own / all : 0
+export function benchShare(parts: Mixture): number {
+  const mean = parts.reduce((sum, part) => sum + part.weight * part.mean, 0)
+  const common = parts.reduce((sum, part) => sum + part.weight * (part.mean - mean) ** 2, 0)
+  return common / (common + parts.reduce((sum, part) => sum + part.weight * part.variance, 0))
 }
 
 /** How much longer than the sheet the tested rungs take, each counting by the share of its doubt that tests have taken away. */
@@ -134,26 +133,34 @@ function speedBand(rungs: readonly { scale: SheetScale, own: readonly Posterior[
   return { median: Math.exp(log), p10: Math.exp(log - bandZ * sd), p90: Math.exp(log + bandZ * sd) }
 }
 
+/** Chances under this are left out of a rung's mixture. */
+const leastChance = 1e-12
+
+/** A rung's scores: every offset of every division, with what its coats add. */
+function mixed(own: readonly Posterior[], weights: readonly number[]): Mixture {
+  return divisions.flatMap(({ bench, coat }, d) => (bench === 0
+    ? [{ weight: weights[d]!, mean: 0, variance: coat * coat }]
+    : Array.from(own[d]!.chances, (p, i) => ({ weight: weights[d]! * p, mean: bench * grid[i]!, variance: coat * coat })).filter(part => part.weight > leastChance)))
+}
+
 /**
- * Learns a bench from the touch tests of its coats of one material. `quantiles` are the sheet's tables of the rungs, in ladder order. The
- * order of the tests is irrelevant. A rung's offset is taught by its own tests alone; how even the bench is, by all, coat by coat. A rung that was
- * never tested stays on the sheet. See docs/model.md for why this form, and what it reaches.
+ * Learns a bench from the touch tests of its coats of one material, in the order they were told. `quantiles` are the sheet's tables of the rungs,
+ * in ladder order. A rung's offset is taught by its own tests alone; how even the bench is, by all, coat by coat, up to the last "reached": so a
+ * "not yet" moves every time later or leaves it, and what it shows about evenness counts from the next "reached" on. But for that the order is
+ * irrelevant. A rung that was never tested stays on the sheet. See docs/model.md for why this form, and what it reaches.
  */
 export function learnBench(quantiles: readonly QuantileTable[], tests: readonly BenchTest[]): BenchSpeed {
+  const counted = tests.filter(test => test.weight > 0 && test.rung in quantiles)
+  const settled = counted.slice(0, counted.findLastIndex(test => test.reached) + 1)
+  const since = counted.slice(settled.length)
   const rungs = quantiles.map((table, k) => {
-    const mine = tests.filter(test => test.rung === k && test.weight > 0)
-    if (mine.length === 0) return null
+    if (!counted.some(test => test.rung === k)) return null
     const scale = sheetScale(table)
-    return { scale, own: divisions.map(division => posterior(mine, scale, division)) }
+    const logs = divisions.map(division => told(prior, settled.filter(test => test.rung === k), scale, division))
+    return { scale, logs, own: divisions.map((division, d) => posterior(told(logs[d]!, since.filter(test => test.rung === k), scale, division))) }
   })
   const tested = rungs.filter(rung => rung !== null)
   if (tested.length === 0) return sheetSpeed
-  const weights = weighed(tests.filter(test => rungs[test.rung] && test.weight > 0), rungs.map(rung => rung && rung.scale), tested.map(rung => rung.own))
-  return {
-    kind: 'learned',
-    rungs: rungs.map(rung => rung && {
-      parts: divisions.map(({ bench, coat }, d) => ({ weight: weights[d]!, mean: bench * rung.own[d]!.mean, variance: bench * bench * rung.own[d]!.variance + coat * coat })),
-    }),
-    speed: speedBand(tested, weights),
-  }
+  const weights = weighed(settled, rungs.map(rung => rung && rung.scale), tested.map(rung => rung.logs))
+  return { kind: 'learned', rungs: rungs.map(rung => rung && { parts: mixed(rung.own, weights) }), speed: speedBand(tested, weights) }
 }

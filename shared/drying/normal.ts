@@ -5,9 +5,13 @@ export function density(x: number): number {
 
 /** Standard normal distribution function, to double precision (G. West, "Better approximations to cumulative normal functions", 2005, after Hart 1968). */
 export function normal(x: number): number {
+  return normalWithBell(x, Math.exp(-x * x / 2))
+}
+
+/** The same where exp(-x²/2) is known already. */
+export function normalWithBell(x: number, bell: number): number {
   const size = Math.abs(x)
   if (size > 37) return x > 0 ? 1 : 0
-  const bell = Math.exp(-size * size / 2)
   let tail: number
   if (size < 7.07106781186547) {
     let top = 3.52624965998911e-2 * size + 0.700383064443688

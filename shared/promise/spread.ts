@@ -1,5 +1,7 @@
 import type { QuantileTable } from '#shared/drying/doubt'
+import { chances, tabledQuantile } from '#shared/drying/doubt'
 import { benchShare } from '#shared/drying/learn'
+import { normalQuantile } from '#shared/drying/normal'
 import type { Curve, DoubtfulWait, Spread } from '#shared/promise/types'
 
 /**
@@ -9,19 +11,20 @@ import type { Curve, DoubtfulWait, Spread } from '#shared/promise/types'
 export function spreadOf(table: QuantileTable, extra: number): Spread {
   const { plus2, minus2, tau2 } = table.doubt
   if (!table.learned) return { kind: 'sheet', bench: Math.sqrt(tau2), late: Math.sqrt(plus2 + extra), early: Math.sqrt(minus2 + extra) }
-  const { parts, scale } = table.learned
-  const mean = parts.reduce((sum, part) => sum + part.weight * part.mean, 0)
-  const side = mean > 0 ? scale.late : scale.early
-  const spread = parts.reduce((sum, part) => sum + part.weight * Math.sqrt(part.variance + extra / (side * side)), 0)
-  const shared = benchShare(parts)
-  return { kind: 'score', mean, spread, bench: Math.sqrt(shared), own: Math.sqrt(1 - shared), middle: scale.middle, late: scale.late, early: scale.early }
+  const common = benchShare(table.learned.parts)
+  return { kind: 'score', bench: Math.sqrt(common), own: Math.sqrt(1 - common), points: ([0, 1, 2, 3] as const).map(chance => tabledQuantile(table, chance, extra)) }
 }
+
+/** Scores of the chances of a table: 10, 50, 90 and 98 %. */
+const places = chances.map(normalQuantile)
 
 /** ln of how many times longer than its sheet's typical a film takes, for its material's draw and its own, both standard normal; more is slower. */
 export function logTime(spread: Spread, shared: number, own: number): number {
   if (spread.kind === 'sheet') return spread.bench * shared + (own > 0 ? spread.late : spread.early) * own
-  const score = spread.mean + spread.spread * (spread.bench * shared + spread.own * own)
-  return spread.middle + (score > 0 ? spread.late : spread.early) * score
+  const score = spread.bench * shared + spread.own * own
+  const i = score < places[1]! ? 0 : score < places[2]! ? 1 : 2
+  const [from, to] = [spread.points[i]!, spread.points[i + 1]!]
+  return from + (to - from) * (score - places[i]!) / (places[i + 1]! - places[i]!)
 }
 
 /** The minutes of a curve at an ln time. */

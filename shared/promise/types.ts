@@ -3,12 +3,12 @@ import type { PromiseCause } from '#shared/terms'
 
 /**
  * Doubt of ln time from the model's own spread, for two standard normal draws: one that all coats of a material share, one of the coat.
- * `sheet`: shared * bench + own, own late (positive) or early by its side. `score`: what a bench's tests make of it, on the sheet's scale:
- * mean + spread * (bench * shared + own * coat), then middle + late or early times that. bench² + own² is 1.
+ * `sheet`: shared * bench + own, own late (positive) or early by its side. `score`: bench * shared + own * coat, a standard
+ * normal (bench² + own² is 1), read at its place among the ln times of 10, 50, 90 and 98 % (`points`), straight between them and on beyond.
  */
 export type Spread =
   | { kind: 'sheet', bench: number, late: number, early: number }
-  | { kind: 'score', mean: number, spread: number, bench: number, own: number, middle: number, late: number, early: number }
+  | { kind: 'score', bench: number, own: number, points: readonly number[] }
 
 /** Minutes of wait by ln time from `from` on in equal steps, straight between them and flat beyond. */
 export interface Curve { from: number, step: number, minutes: readonly number[] }

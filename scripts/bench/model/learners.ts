@@ -22,7 +22,8 @@ export function meanReached(sheet: PreparedMaterial, visits: readonly Visit[]): 
 const bench: Learner = {
   name: 'bench', says: 'the bench\'s own tests',
   learn: (sheet, visits) => {
-    const tests = visits.map(({ coat, rung, minutes, reached }) => ({ coat, rung, log: Math.log(minutes / sheet.rungs[rung]!.typical), reached, weight: 1, extra: clockVariance }))
+    const inOrder = [...visits].sort((a, b) => a.at - b.at)
+    const tests = inOrder.map(({ coat, rung, minutes, reached }) => ({ coat, rung, log: Math.log(minutes / sheet.rungs[rung]!.typical), reached, weight: 1, extra: clockVariance }))
     const speed = learnBench(sheet.rungs.map(r => r.quantiles), tests)
     return speed.kind === 'learned' ? withLearned(sheet, speed) : sheet
   },
