@@ -27,13 +27,17 @@ export function readSet(folder: string, set: string, most: number, wanted = /./)
 
 export interface Gap { mean: number, atBest: number, found: number, count: number, better: string[], missed: string[] }
 
-/** How far above the best known, over those with a best known. */
+/** A number of schedules is quickly built and says as much of the seed as of the search: the mean of several. */
+const seedsFor = ({ seconds }: Limits): readonly number[] => (seconds === undefined ? [1, 2, 3, 4] : [1])
+
+/** How far above the best known, over those with a best known and all seeds of the limits. */
 export function gapOf(instances: readonly Instance[], limits: Limits): Gap {
   const gap: Gap = { mean: 0, atBest: 0, found: 0, count: 0, better: [], missed: [] }
-  for (const { name, problem, best } of instances) {
+  const runs = instances.flatMap(instance => seedsFor(limits).map(seed => ({ ...instance, seed })))
+  for (const { name, problem, best, seed } of runs) {
     if (best === null) continue
     gap.count++
-    const plan = judged(problem, limits)
+    const plan = judged(problem, { ...limits, seed })
     if (plan.unplaced.length > 0) {
       gap.missed.push(name)
       continue
@@ -54,12 +58,12 @@ interface Asked { set: string, measure: string, limits: Limits, bar: number, aim
 
 const projects: readonly Asked[] = [
   { set: 'j30', measure: 'J30, 1 s', limits: { seconds: 1 }, bar: 0.001, aim: 0.0002, over: 'over optimum' },
-  { set: 'j30', measure: 'J30, 50,000 schedules', limits: { schedules: 50_000 }, bar: 0, aim: 0, over: 'over optimum' },
+  { set: 'j30', measure: 'J30, 50,000 schedules, seeds 1 to 4', limits: { schedules: 50_000 }, bar: 0, aim: 0, over: 'over optimum' },
   { set: 'j60', measure: 'J60, 1 s', limits: { seconds: 1 }, bar: 0.0045, aim: 0.0025, over: 'over best known' },
   { set: 'j60', measure: 'J60, 5 s', limits: { seconds: 5 }, bar: 0.0025, aim: 0.0012, over: 'over best known' },
   { set: 'j120', measure: 'J120, 1 s', limits: { seconds: 1 }, bar: 0.03, aim: 0.02, over: 'over best known' },
   { set: 'j120', measure: 'J120, 5 s', limits: { seconds: 5 }, bar: 0.023, aim: 0.014, over: 'over best known' },
-  { set: 'j120', measure: 'J120, 5,000 schedules', limits: { schedules: 5000 }, bar: 0.036, aim: 0.024, over: 'over best known' },
+  { set: 'j120', measure: 'J120, 5,000 schedules, seeds 1 to 4', limits: { schedules: 5000 }, bar: 0.036, aim: 0.024, over: 'over best known' },
   { set: 'rcpsp-max', measure: 'RCPSP/max ubo10-50 and j10-j30, 1 s', limits: { seconds: 1 }, bar: 0.003, aim: 0.001, over: 'over best known, all with a plan', wanted: /^(ubo10_|ubo20_|ubo50_|j)/ },
   { set: 'rcpsp-max', measure: 'RCPSP/max ubo100 and ubo200, 1 s', limits: { seconds: 1 }, bar: NaN, aim: 0.001, over: 'over best known, all with a plan', wanted: /^(ubo100_|ubo200_)/ },
 ]
