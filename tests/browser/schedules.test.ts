@@ -223,9 +223,11 @@ describe('what was done alike three times', () => {
     for (const no of [1, 2, 3]) {
       expect(await offer.count()).toBe(0)
       await key(page, `Plaque ${no}`).click()
+      await expect.poll(() => key(page, `Plaque ${no}`).getAttribute('aria-pressed')).toBe('true')
       await page.getByRole('radio', { name: 'Acrylic gesso' }).check()
       await key(page, 'Acrylic gesso is on').click()
-      await page.getByText(new RegExp(`Plaque ${no}`)).first().waitFor()
+      // Told, it is chosen no more.
+      await expect.poll(() => key(page, `Plaque ${no}`).getAttribute('aria-pressed')).toBe('false')
     }
     await offer.waitFor()
     expect(await axeProblems(page)).toEqual([])
