@@ -18,6 +18,12 @@ export default defineNuxtConfig({
   eslint: { config: { stylistic: true } },
   // A page's script is fetched when a link to it is reached for, not when it comes into sight: a phone on the board needs the board.
   experimental: { defaults: { nuxtLink: { prefetchOn: { visibility: false, interaction: true } } } },
+  hooks: {
+    // What is lazy is fetched when it is asked for: a decoder for tags is nothing that a board should load beforehand.
+    'build:manifest': (manifest) => {
+      for (const chunk of Object.values(manifest)) chunk.prefetch = false
+    },
+  },
   runtimeConfig: {
     // Filled from NUXT_SESSION_PASSWORD and NUXT_SESSION_COOKIE_SECURE, which the start script sets.
     session: { name: 'stillwet', password: '', maxAge: 60 * 60 * 24 * 60, cookie: { sameSite: 'lax', secure: true, httpOnly: true } },
