@@ -4,13 +4,14 @@ import { fillIn } from './construct'
 import { Seat } from './seat'
 import type { Layout } from './construct'
 import type { Model } from './model'
-import type { Unit } from './units'
+import type { Unit, UnitNode } from './units'
 
 interface Next { seat: Seat, node: number, at: number }
 
 /**
  * The last plan on the facts of now: every activity in the order of its old starts and not before it, so that sessions form as they did.
- * A piece that cannot keep to it (a window has moved, a place is taken) comes off and is placed anew after the others, as is what is new.
+ * A piece that cannot keep to it (a window has moved, a place is taken) comes off, with those that shared its sessions: they find their old
+ * places again before it looks for a new one, after all others, as does what is new.
  * @param units each piece alone
  * @param floors old starts by activity
  */
@@ -19,20 +20,29 @@ export function replay(model: Model, units: readonly Unit[], floors: Int32Array,
   const layout: Layout = { board, seats: [], conflicts: nameFixed(board) }
   const seats = units.map(unit => new Seat(board, unit))
   const { previous } = model.problem
-  const isOld = (seat: Seat) => seat.unit.nodes.some(node => model.problem.activities[node.members[0]!]!.id in previous)
+  const wasAt = ({ members }: UnitNode) => previous[model.problem.activities[members[0]!]!.id]
+  const isOld = (seat: Seat) => seat.unit.nodes.some(node => wasAt(node) !== undefined)
   const old = seats.filter(isOld)
   for (const seat of old) seat.open(floors)
   const steps = old.flatMap(seat => stepsOf(seat, floors)).sort((a, b) => a.at - b.at)
   const failed = new Set<Seat>()
+  const off = new Set<Seat>()
   for (const { seat, node } of steps) {
-    if (failed.has(seat) || seat.placeNode(node).kind === 'placed') continue
+    if (off.has(seat)) continue
+    const was = wasAt(seat.unit.nodes[node]!)
+    if (seat.placeNode(node).kind === 'placed' && (was === undefined || seat.start(node) === was)) continue
     failed.add(seat)
+    // Off at once: what is later than it was must not take the time of those that keep theirs.
+    const going = [...withLater([seat])].filter(each => !off.has(each))
+    for (const each of going) {
+      each.remove()
+      off.add(each)
+    }
   }
-  const off = withLater(failed)
-  for (const seat of off) seat.remove()
   board.settle()
   layout.seats.push(...old.filter(seat => !off.has(seat)))
-  const rest = seats.filter(seat => !isOld(seat) || off.has(seat))
+  // Those that only came off with another find their old places before what must move looks for a new one.
+  const rest = [...old.filter(seat => off.has(seat) && !failed.has(seat)), ...seats.filter(seat => !isOld(seat) || failed.has(seat))]
   for (const seat of rest) for (const node of seat.unit.nodes) for (const activity of node.members) board.placed[activity] = 0
   return fillIn(layout, rest, floors, shouldStop) ? layout : null
 }

@@ -77,6 +77,21 @@ describe('planning anew', () => {
     }
   })
 
+  it('lets those that shared a session with what must move keep their own times', () => {
+    // Set-up 80-90, then a 90-110, b 110-130, c 130-150 in a row. Now a is ready at 120 only: it would take 120-140 from b and c, and comes on after them, 150-170.
+    const ids = ['a', 'b', 'c']
+    const problem = planProblem({
+      resources: [{ id: 'hands', capacity: 1 }], horizon: 600,
+      activities: ids.flatMap(id => [{ id: `${id} coat`, minutes: 10, uses: { hands: 1 } }, { id: `${id} sand`, minutes: 20, uses: { hands: 1 } }]),
+      families: [{ id: 'sand', members: ids.map(id => `${id} sand`), mode: 'row', setup: 10 }],
+      lags: ids.map(id => ({ from: `${id} coat`, to: `${id} sand`, min: id === 'a' ? 110 : 60 })),
+      previous: { 'a coat': 0, 'b coat': 10, 'c coat': 20, 'a sand': 90, 'b sand': 110, 'c sand': 130 },
+    })
+    const plan = solve(problem, { schedules: 1 })
+    expect(check(problem, plan)).toEqual([])
+    expect(startsOf(plan)).toEqual({ 'a coat': 0, 'b coat': 10, 'c coat': 20, 'a sand': 150, 'b sand': 110, 'c sand': 130 })
+  })
+
   it('tells the first plan at once', () => {
     const problem = fromContract(studioWeek(6, 6))
     const told: number[] = []
