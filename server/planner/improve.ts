@@ -20,6 +20,10 @@ const weaving = 0.6
 const warmth = 0.06
 const warmthOfChange = 0.3
 
+/** More than this at once is a new plan, not a change; more may come off where most of them go back to their old times. */
+const mostSeats = 10
+const mostOfOld = 60
+
 /**
  * Makes a plan better, change by change: some pieces come off the board and are placed again, in another order, later than they could be, or
  * grouped otherwise. What is better stays, what is worse sometimes (simulated annealing), and the best is kept.
@@ -35,6 +39,8 @@ export class Improve {
   /** By how much a change for the worse makes it worse. */
   private usual = 0
   private readonly ruin: Ruin
+  /** Starts of the last plan by activity, where there is one. */
+  private readonly old: Int32Array | null
   private readonly floors: Floors
   private readonly regroup: Regroup | null
   private readonly weave: Weave
@@ -46,7 +52,9 @@ export class Improve {
     this.bestSeats = this.seats.slice()
     this.cost = costing.of(layout.board, this.seats)
     this.best = this.cost
-    this.ruin = new Ruin(model, costing, random)
+    const { previous, activities } = model.problem
+    this.old = Object.keys(previous).length > 0 ? Int32Array.from(activities, ({ id }) => previous[id] ?? 0) : null
+    this.ruin = new Ruin(model, costing, this.old ? mostOfOld : mostSeats, random)
     this.floors = new Floors(model.size, random)
     this.weave = new Weave(layout.board, this.floors, random)
     this.regroup = pieces.some(like => like.length > 1) ? new Regroup(model, pieces, random) : null
@@ -62,9 +70,11 @@ export class Improve {
     this.idle++
     if (phase === 0 && this.cost > this.best) this.recall()
     const sooner = phase < this.seats.length && this.seats.length * 4 < roundLength
-    const out = sooner ? this.earliest(phase) : this.ruin.choose(this.layout.board, this.seats)
-    if (out.length === 0) return false
-    return this.change(out, sooner, phase)
+    if (sooner) return this.change(this.earliest(phase), true, phase)
+    const { chosen, all } = this.ruin.choose(this.layout.board, this.seats)
+    if (all.length === 0) return false
+    const isLarge = all.length > mostSeats
+    return this.old && (isLarge || this.random() < 0.5) ? this.repair(chosen, all, phase) : this.change(all, false, phase)
   }
 
   /** The seats in turn, by when they begin: each is placed again where it can be soonest. */
@@ -73,14 +83,34 @@ export class Improve {
     return [...withLater([this.seats[phase]!])]
   }
 
+  /** Those chosen are placed anew, or where they were by the last plan, after the others that came off with them have their old times again: little moves. */
+  private repair(chosen: ReadonlySet<Seat>, out: readonly Seat[], phase: number): boolean {
+    const home = this.random() < 0.5
+    return this.attempt(out, out, phase, () => {
+      for (const seat of out) {
+        if (!home && chosen.has(seat)) continue
+        if (seat.place(this.old) !== null && !placeSoftly(seat, null)) return false
+        this.moved.add(seat)
+      }
+      return home || this.placeAll([...chosen], false)
+    })
+  }
+
   private change(out: readonly Seat[], sooner: boolean, phase: number): boolean {
-    const { board } = this.layout
     const into = !sooner && this.regroup && this.random() < 0.15 ? this.regroup.of(out) ?? out : out
+    return this.attempt(out, into, phase, () => {
+      const woven = !sooner && this.random() < weaving && this.weave.place(into, this.seats)
+      if (woven) for (const seat of into) this.moved.add(seat)
+      return woven || this.placeAll(into, sooner)
+    })
+  }
+
+  /** Takes off, places, and keeps that or goes back. */
+  private attempt(out: readonly Seat[], into: readonly Seat[], phase: number, place: () => boolean): boolean {
+    const { board } = this.layout
     const [logged, changed] = [board.logged, board.changed]
     for (const seat of out) seat.remove()
-    const woven = !sooner && this.random() < weaving && this.weave.place(into, this.seats)
-    if (woven) for (const seat of into) this.moved.add(seat)
-    const done = woven || this.placeAll(into, sooner)
+    const done = place()
     const next = this.seatsWith(out, into)
     const cost = done ? this.costing.of(board, next) : Infinity
     if (cost > this.cost && cost < Infinity) this.usual += (cost - this.cost - this.usual) * 0.02

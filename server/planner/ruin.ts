@@ -4,21 +4,23 @@ import type { Model } from './model'
 import type { Board } from './board'
 import type { Seat } from './seat'
 
-/** More than this at once is a new plan, not a change. */
-const mostSeats = 10
-
 /** Up to so many pieces all of them meet each other: more may come off, and not only neighbours. */
 const few = 24
+
+/** `chosen` are to change; `all` come off with them, having come on to their sessions. */
+export interface Chosen { chosen: ReadonlySet<Seat>, all: readonly Seat[] }
+
+const none: Chosen = { chosen: new Set(), all: [] }
 
 /** Chooses what comes off the board in one change: pieces at random, near each other in time, or late, with what has come on to their sessions. */
 export class Ruin {
   private readonly near: { seat: Seat, distance: number }[] = []
   private readonly lateJobs: number[] = []
 
-  constructor(private readonly model: Model, private readonly cost: Cost, private readonly random: () => number) {}
+  constructor(private readonly model: Model, private readonly cost: Cost, private readonly most: number, private readonly random: () => number) {}
 
-  /** One seat or more; empty when too much hangs together. */
-  choose(board: Board, seats: readonly Seat[]): Seat[] {
+  /** One seat or more; nothing when too much hangs together. */
+  choose(board: Board, seats: readonly Seat[]): Chosen {
     const { random } = this
     const count = Math.min(seats.length, 1 + Math.floor((seats.length > few ? 4 : 8) * random() * random() + random()))
     const first = random() < 0.4 ? this.missing(seats) ?? this.late(board, seats) : null
@@ -27,7 +29,7 @@ export class Ruin {
     if (seats.length > few || random() < 0.5) this.addNear(seed, seats, chosen, count)
     for (let tries = 0; chosen.size < count && tries < 8; tries++) chosen.add(seats[Math.floor(random() * seats.length)]!)
     const all = withLater(chosen)
-    return all.size > mostSeats ? [] : [...all]
+    return all.size > this.most ? none : { chosen, all: [...all] }
   }
 
   /** One that misses a window. */
