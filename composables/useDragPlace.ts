@@ -47,6 +47,7 @@ export function useDragPlace(put: (drop: Drop) => void) {
       document.removeEventListener('keydown', escape)
       const last = drop.value
       drop.value = null
+      document.body.classList.remove('select-none')
       if (kept && last) put(last)
     }
     const up = () => end(true)
@@ -54,6 +55,8 @@ export function useDragPlace(put: (drop: Drop) => void) {
     const escape = (pressed: KeyboardEvent) => {
       if (pressed.key === 'Escape') end(false)
     }
+    // Else the page's words are marked along the way.
+    document.body.classList.add('select-none')
     handle.setPointerCapture(event.pointerId)
     handle.addEventListener('pointermove', move)
     handle.addEventListener('pointerup', up)

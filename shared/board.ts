@@ -52,10 +52,16 @@ export function standings(pieces: readonly ReadPiece[]): Map<number, Standing[]>
 
 export const filmsOf = (standing: Pick<Standing, 'groups'>): FilmState[] => standing.groups.flatMap(({ group }) => group.films)
 
-/** How the next moment of a piece is said. Parts that stand apart get better by their own films. */
-function momentOf({ piece, verdict, whole }: Standing, clock: Clock): Pick<StandingPiece, 'moment' | 'tone'> {
-  const { next } = piece
-  if (next === null || (!whole && next.kind === 'better')) return { moment: betterText(verdict, clock), tone: 'plain' }
+/** Whether what is next on a piece is done to the parts that stand here. */
+function isOfThese({ piece, groups, whole }: Standing, what: string): boolean {
+  const here = new Set(groups.flatMap(({ group }) => group.parts.map(part => part.partId)))
+  return whole || piece.turns.some(({ turn }) => (turn.step.name === what || turn.name === what) && turn.partIds.some(id => here.has(id)))
+}
+
+/** How the next moment of a piece is said. Parts that stand apart get better by their own films, and wait for what is done to them. */
+function momentOf(standing: Standing, clock: Clock): Pick<StandingPiece, 'moment' | 'tone'> {
+  const { piece: { next }, verdict, whole } = standing
+  if (next === null || (!whole && next.kind === 'better') || !isOfThese(standing, next.what)) return { moment: betterText(verdict, clock), tone: 'plain' }
   const shutting = next.kind === 'start by' && next.at - clock.now <= aboutToShutMs
   return { moment: momentText(next, clock), tone: shutting ? 'shutting' : next.kind === 'may begin' && next.open ? 'open' : 'plain' }
 }

@@ -1,8 +1,9 @@
 import type { Browser } from 'playwright-core'
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { studioZone } from '#shared/time'
-import { readPiece } from '#shared/verdict/piece'
+import { readPiece, speakingParts } from '#shared/verdict/piece'
 import { momentText } from '#shared/words/moments'
+import { ofParts } from '#shared/words/parts-said'
 import { asSentence, verdictTitle } from '#shared/words/verdict'
 import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
 import { signInAs, stateOf } from '../helpers/demo-studio'
@@ -112,8 +113,8 @@ async function readings() {
   const state = await stateOf(maker)
   const clock = { now: state.at, zone: studioZone(state.studio.zone) }
   return state.pieces.map((piece) => {
-    const { verdict, next } = readPiece(piece, state, state.at, null)
-    return { id: piece.id, name: piece.name, parted: new Set(piece.groups.map(group => group.placeId)).size > 1, title: verdictTitle(verdict.kind, verdict.grip), moment: next ? momentText(next, clock) : '', job: next?.kind === 'start by' && next.at > state.at ? next.what : null }
+    const { verdict, next, groups } = readPiece(piece, state, state.at, null)
+    return { id: piece.id, name: piece.name, parted: new Set(piece.groups.map(group => group.placeId)).size > 1, title: verdictTitle(verdict.kind, verdict.grip), ofWhich: ofParts(speakingParts(groups, verdict)), moment: next ? momentText(next, clock) : '', job: next?.kind === 'start by' && next.at > state.at ? next.what : null }
   })
 }
 
@@ -134,7 +135,7 @@ describe('one piece', () => {
       if (!piece) continue
       await cell.click()
       const strip = await page.getByRole('dialog').textContent() ?? ''
-      if (!strip.includes(asSentence(piece.title)) || !strip.includes(asSentence(piece.moment).slice(0, -1))) wrong.push(`strip, ${name}: ${strip}`)
+      if (!strip.includes(asSentence(piece.title + piece.ofWhich)) || !strip.includes(asSentence(piece.moment).slice(0, -1))) wrong.push(`strip, ${name}: ${strip}`)
       await page.keyboard.press('Escape')
       await page.getByRole('dialog').waitFor({ state: 'hidden' })
     }
@@ -153,7 +154,7 @@ describe('one piece', () => {
     for (const piece of pieces) {
       const { body } = await maker.get<string>(`/pieces/${piece.id}`)
       const head = await page.evaluate(html => new DOMParser().parseFromString(html, 'text/html').querySelector('main header')?.textContent ?? '', body)
-      if (!head.includes(asSentence(piece.title)) || !head.includes(asSentence(piece.moment))) wrong.push(`piece page, ${piece.name}: ${head}`)
+      if (!head.includes(asSentence(piece.title + piece.ofWhich)) || !head.includes(asSentence(piece.moment))) wrong.push(`piece page, ${piece.name}: ${head}`)
     }
     await visit(page, '/hands')
     pieces = await readings()

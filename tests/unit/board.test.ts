@@ -4,6 +4,7 @@ import { dryness } from '#shared/dryness'
 import { pieceStrip } from '#shared/board-strip'
 import { handlingSheet } from '#shared/sheet'
 import { pagesOf, shelfLines } from '#shared/sheet-pages'
+import type { TurnState } from '#shared/schemas/piece-state'
 import { at, clockAt, filmState, groupState, noon, pieceState, readAll, studioWith } from '../helpers/board'
 
 const clock = clockAt(noon)
@@ -39,6 +40,17 @@ describe('the drawing of the studio', () => {
     const [shelf, clamps] = drawBoard(state, readAll(state, noon), clock).rooms[0]?.places ?? []
     expect(shelf?.cells.map(({ name, kind }) => [name, kind])).toEqual([['Ledger 5, cover', 'may be handled']])
     expect(clamps?.cells.map(({ name, kind }) => [name, kind])).toEqual([['Ledger 5, spine', 'hands off']])
+  })
+
+  it('says what is next only where it is done to the parts that stand there', () => {
+    const release: TurnState = {
+      turnId: 1, partIds: [2], kind: 'release', name: 'out of clamps', no: 1, of: 1, status: 'waiting', setupMin: 0, pieceMin: 5, cleanMin: 0, dust: 'none', notOnAt: null, doing: null, wantedAt: at(12.5), waits: [], plan: null,
+      step: { id: 1, key: 'glue', name: 'Glue the spine', kind: 'glue-up', origin: 'schedule', status: 'in progress', asideReason: null, hold: 'clamps', untilEnough: false, materialVersionId: 1, material: null, solventBorne: false },
+    }
+    const state = studioWith([pieceState(1, 'Ledger 5', [groupState(1, 1, [], 'cover'), groupState(2, 2, [filmState({ kind: 'glue-up', hold: 'clamps' })], 'spine')], { turns: [release] })])
+    const [shelf, clamps] = drawBoard(state, readAll(state, noon), clock).rooms[0]?.places ?? []
+    expect(clamps?.cells[0]?.moment).toBe('take out of clamps from 12:30')
+    expect(shelf?.cells[0]?.moment).toBeNull()
   })
 
   it('makes one swatch of loose parts that lie together, by the worst of them', () => {
