@@ -45,7 +45,7 @@ describe('the drawing of the studio', () => {
   it('says what is next only where it is done to the parts that stand there', () => {
     const release: TurnState = {
       turnId: 1, partIds: [2], kind: 'release', name: 'out of clamps', no: 1, of: 1, status: 'waiting', setupMin: 0, pieceMin: 5, cleanMin: 0, dust: 'none', notOnAt: null, doing: null, wantedAt: at(12.5), waits: [], plan: null,
-      step: { id: 1, key: 'glue', name: 'Glue the spine', kind: 'glue-up', origin: 'schedule', status: 'in progress', asideReason: null, hold: 'clamps', untilEnough: false, materialVersionId: 1, material: null, solventBorne: false },
+      step: { id: 1, key: 'glue', name: 'Glue the spine', kind: 'glue-up', origin: 'schedule', status: 'resting', asideReason: null, hold: 'clamps', untilEnough: false, materialVersionId: 1, material: null, solventBorne: false },
     }
     const state = studioWith([pieceState(1, 'Ledger 5', [groupState(1, 1, [], 'cover'), groupState(2, 2, [filmState({ kind: 'glue-up', hold: 'clamps' })], 'spine')], { turns: [release] })])
     const [shelf, clamps] = drawBoard(state, readAll(state, noon), clock).rooms[0]?.places ?? []
