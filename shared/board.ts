@@ -52,9 +52,12 @@ export function standings(pieces: readonly ReadPiece[]): Map<number, Standing[]>
 
 export const filmsOf = (standing: Pick<Standing, 'groups'>): FilmState[] => standing.groups.flatMap(({ group }) => group.films)
 
+const partsOf = ({ groups }: Standing): ReadonlySet<number> => new Set(groups.flatMap(({ group }) => group.parts.map(part => part.partId)))
+
 /** Whether what is next on a piece is done to the parts that stand here. */
-function isOfThese({ piece, groups, whole }: Standing, what: string): boolean {
-  const here = new Set(groups.flatMap(({ group }) => group.parts.map(part => part.partId)))
+function isOfThese(standing: Standing, what: string): boolean {
+  const { piece, whole } = standing
+  const here = partsOf(standing)
   return whole || piece.turns.some(({ turn }) => (turn.step.name === what || turn.name === what) && turn.partIds.some(id => here.has(id)))
 }
 
@@ -71,13 +74,15 @@ export function standingCell(standing: Standing, clock: Clock, moved: ReadonlyMa
   const { piece, verdict, name, suffix } = standing
   return {
     key: piece.piece.id, name: name + suffix, pieceName: name, suffix, series: piece.piece.batch.id, dry: dryness(filmsOf(standing), clock.now), kind: verdict.kind, verdict: swatchText(verdict, clock, ofParts(speakingParts(standing.groups, verdict))),
-    ...momentOf(standing, clock), was: wasOf(piece, moved, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
+    ...momentOf(standing, clock), was: wasOf(standing, moved, clock), pieceIds: [piece.piece.id], count: 1, clamps: 1,
   }
 }
 
-/** Where the plan had the next turn of a piece before it moved it. */
-function wasOf({ turns }: ReadPiece, moved: ReadonlyMap<number, MovedTurn>, clock: Clock): string | null {
-  const [first] = turns.flatMap(({ turn }) => moved.get(turn.turnId) ?? []).sort((a, b) => a.isAt - b.isAt)
+/** Where the plan had the next turn of what stands here before it moved it. */
+function wasOf(standing: Standing, moved: ReadonlyMap<number, MovedTurn>, clock: Clock): string | null {
+  const here = partsOf(standing)
+  const own = standing.piece.turns.filter(({ turn }) => standing.whole || turn.partIds.some(id => here.has(id)))
+  const [first] = own.flatMap(({ turn }) => moved.get(turn.turnId) ?? []).sort((a, b) => a.isAt - b.isAt)
   return first ? wasText(first, clock) : null
 }
 

@@ -187,6 +187,6 @@ export const toldWords = {
 /** Oily rags, asked until somebody says. */
 export const ragWords = {
   ask: (room: string) => `Where are the oily rags from ${room}?`,
-  since: (time: string) => `Oil was last on the rags at ${time}. ${cautionParts.ragsHeat} ${cautionParts.ragsAll}`,
+  since: (time: string) => `Oil was last on the rags: ${time}. ${cautionParts.ragsHeat} ${cautionParts.ragsAll}`,
   answers: { 'flat outdoors': 'Spread flat outdoors', 'in water can': 'In the water can', 'not dealt with': 'Not dealt with yet' },
 } as const

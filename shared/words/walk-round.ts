@@ -20,9 +20,9 @@ export const walkWords = {
   extraNone: 'Nothing is missing elsewhere. What stands here and is not in the list can be moved here on its own page.',
   found: (name: string, place: string) => `${name}, from ${place}`,
   move: (count: number) => count === 1 ? 'It stands here' : `These ${count} stand here`,
-  done: 'Every shelf was walked past.',
+  done: 'That was the last shelf.',
   lost: (count: number) => count === 1 ? 'One is not where it should be:' : `${count} are not where they should be:`,
   shouldBe: (place: string) => `should be at ${place}`,
-  nothingLost: 'Everything is where it should be.',
+  nothingLost: 'Nothing is told missing.',
   again: 'Walk round again',
 } as const
