@@ -82,7 +82,7 @@ class OrderSearch {
   private restart(tails: Int32Array): void {
     this.idle = 0
     this.members.sort((a, b) => a.makespan - b.makespan)
-    const keep = this.limits.random() < 0.5 ? this.population / 2 : 0
+    const keep = this.limits.random() < 0.5 ? Math.ceil(this.population / 2) : 0
     for (let k = keep; k < this.population && !this.done(); k++) this.seed(k, tails)
   }
 }
