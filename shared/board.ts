@@ -55,16 +55,15 @@ export const filmsOf = (standing: Pick<Standing, 'groups'>): FilmState[] => stan
 const partsOf = ({ groups }: Standing): ReadonlySet<number> => new Set(groups.flatMap(({ group }) => group.parts.map(part => part.partId)))
 
 /** Whether what is next on a piece is done to the parts that stand here. */
-function isOfThese(standing: Standing, what: string): boolean {
-  const { piece, whole } = standing
+function isOfThese(standing: Standing, stepId: number): boolean {
   const here = partsOf(standing)
-  return whole || piece.turns.some(({ turn }) => (turn.step.name === what || turn.name === what) && turn.partIds.some(id => here.has(id)))
+  return standing.piece.turns.some(({ turn }) => turn.step.id === stepId && turn.partIds.some(id => here.has(id)))
 }
 
 /** How the next moment of a piece is said. Parts that stand apart get better by their own films, and wait for what is done to them. */
 function momentOf(standing: Standing, clock: Clock): Pick<StandingPiece, 'moment' | 'tone'> {
   const { piece: { next }, verdict, whole } = standing
-  if (next === null || (!whole && next.kind === 'better') || !isOfThese(standing, next.what)) return { moment: betterText(verdict, clock), tone: 'plain' }
+  if (next === null || (!whole && (next.kind === 'better' || !isOfThese(standing, next.stepId)))) return { moment: betterText(verdict, clock), tone: 'plain' }
   const shutting = next.kind === 'start by' && next.at - clock.now <= aboutToShutMs
   return { moment: momentText(next, clock), tone: shutting ? 'shutting' : next.kind === 'may begin' && next.open ? 'open' : 'plain' }
 }

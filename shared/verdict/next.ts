@@ -9,7 +9,7 @@ export interface LastStart { stepId: number, stepKind: StepKind, at: number, wha
 export interface Beginning { stepId: number, stepKind: StepKind, at: number, what: string }
 
 /** An attended check inside a rest, or the taking out of what holds it (`out`), ms UTC. `what` says what to do: "change the blotters". */
-export interface DueCheck { at: number, what: string, out: Hold | null }
+export interface DueCheck { stepId: number, at: number, what: string, out: Hold | null }
 
 /** Everything the next moment of a piece is chosen from. */
 export interface NextFacts {
@@ -19,12 +19,12 @@ export interface NextFacts {
   checks: readonly DueCheck[]
 }
 
-/** `what` is the name of the step or check, or what the verdict gets better to. `open` and `due`: already so. */
+/** `stepId`: what it is done for. `what` is the name of the step or check, or what the verdict gets better to. `open` and `due`: already so. */
 export type NextMoment =
-  | { kind: 'start by', at: number, what: string, stepKind: StepKind, shutsAt: number | null, pieces: { some: number, all: number } | null }
-  | { kind: 'may begin', at: number, what: string, stepKind: StepKind, open: boolean }
+  | { kind: 'start by', stepId: number, at: number, what: string, stepKind: StepKind, shutsAt: number | null, pieces: { some: number, all: number } | null }
+  | { kind: 'may begin', stepId: number, at: number, what: string, stepKind: StepKind, open: boolean }
   | { kind: 'better', at: number, what: VerdictKind, grip: string | null }
-  | { kind: 'check', at: number, what: string, out: Hold | null, due: boolean }
+  | { kind: 'check', stepId: number, at: number, what: string, out: Hold | null, due: boolean }
 
 /** The last moment to start something, as a next moment. */
 export type StartBy = Extract<NextMoment, { kind: 'start by' }>
@@ -53,11 +53,11 @@ export function nextMoment(facts: NextFacts, now: number, heardAt: number | null
   const pressed = new Set(starts.map(start => start.stepId))
   const { betterAt, betterKind, betterGrip } = facts.verdict
   const moments: NextMoment[] = [
-    ...starts.map(({ at, what, stepKind, shutsAt, pieces }) => ({ kind: 'start by' as const, at, what, stepKind, shutsAt, pieces })),
+    ...starts.map(({ stepId, at, what, stepKind, shutsAt, pieces }) => ({ kind: 'start by' as const, stepId, at, what, stepKind, shutsAt, pieces })),
     ...facts.mayBegins.filter(({ stepId, at }) => at > now || !pressed.has(stepId))
-      .map(({ at, what, stepKind }) => ({ kind: 'may begin' as const, at, what, stepKind, open: at <= lifting })),
+      .map(({ stepId, at, what, stepKind }) => ({ kind: 'may begin' as const, stepId, at, what, stepKind, open: at <= lifting })),
     ...betterAt !== null && betterKind ? [{ kind: 'better' as const, at: betterAt, what: betterKind, grip: betterGrip }] : [],
-    ...facts.checks.map(({ at, what, out }) => ({ kind: 'check' as const, at, what, out, due: at <= (out === null ? now : lifting) })),
+    ...facts.checks.map(({ stepId, at, what, out }) => ({ kind: 'check' as const, stepId, at, what, out, due: at <= (out === null ? now : lifting) })),
   ]
   const first = (a: NextMoment, b: NextMoment) => Math.max(b.at, now) < Math.max(a.at, now) ? b : a
   return moments.length === 0 ? null : moments.reduce(first)

@@ -104,5 +104,5 @@ function beginnings(turns: readonly ReadTurn[], now: number): Beginning[] {
 }
 
 function checks(turns: readonly ReadTurn[]): DueCheck[] {
-  return turns.flatMap(({ turn }) => (turn.kind === 'work' || turn.wantedAt === null ? [] : [{ at: turn.wantedAt, what: turn.name || turn.step.name, out: turn.kind === 'release' ? turn.step.hold ?? 'clamps' : null }]))
+  return turns.flatMap(({ turn }) => (turn.kind === 'work' || turn.wantedAt === null ? [] : [{ stepId: turn.step.id, at: turn.wantedAt, what: turn.name || turn.step.name, out: turn.kind === 'release' ? turn.step.hold ?? 'clamps' : null }]))
 }

@@ -16,16 +16,16 @@ describe('the next moment of a piece', () => {
   })
 
   it('is the first of all that is to come', () => {
-    const every = { verdict: handled, lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }], checks: [{ at: hour(12), what: 'Change the blotters', out: null }] }
-    expect(nextMoment(facts(every), hour(9), null)).toMatchObject({ kind: 'may begin', at: hour(11), open: false })
-    expect(nextMoment(facts({ ...every, mayBegins: [] }), hour(9), null)).toMatchObject({ kind: 'check', at: hour(12), due: false })
-    expect(nextMoment(facts({ ...every, mayBegins: [], checks: [] }), hour(9), null)).toMatchObject({ kind: 'start by', at: hour(13.8), shutsAt: hour(15) })
+    const every = { verdict: handled, lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }], checks: [{ stepId: 3, at: hour(12), what: 'Change the blotters', out: null }] }
+    expect(nextMoment(facts(every), hour(9), null)).toMatchObject({ kind: 'may begin', stepId: 1, at: hour(11), open: false })
+    expect(nextMoment(facts({ ...every, mayBegins: [] }), hour(9), null)).toMatchObject({ kind: 'check', stepId: 3, at: hour(12), due: false })
+    expect(nextMoment(facts({ ...every, mayBegins: [], checks: [] }), hour(9), null)).toMatchObject({ kind: 'start by', stepId: 1, at: hour(13.8), shutsAt: hour(15) })
     expect(nextMoment(facts({ verdict: handled }), hour(9), null)).toEqual({ kind: 'better', at: hour(14), what: 'may be handled', grip: null })
   })
 
   it('says the last moment to start once the step may begin, never the window\'s end', () => {
     const moment = nextMoment(facts({ lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }] }), hour(12), null)
-    expect(moment).toMatchObject({ kind: 'start by', at: hour(13.8) })
+    expect(moment).toMatchObject({ kind: 'start by', stepId: 1, at: hour(13.8) })
   })
 
   it('goes on to the first four when all twelve can no longer be done, and stays late after that', () => {
@@ -38,7 +38,7 @@ describe('the next moment of a piece', () => {
 
   it('counts what is past as now, in the order named', () => {
     const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(8) }
-    const due = { at: hour(7), what: 'Turn over', out: null }
+    const due = { stepId: 3, at: hour(7), what: 'Turn over', out: null }
     expect(nextMoment(facts({ verdict: handled, mayBegins: [sanding], checks: [due] }), hour(9), null)).toMatchObject({ kind: 'may begin', open: true })
     expect(nextMoment(facts({ verdict: handled, checks: [due] }), hour(9), null)).toMatchObject({ kind: 'check', due: true })
     expect(nextMoment(facts({ lastStarts: [{ ...all, at: hour(8) }], mayBegins: [sanding] }), hour(9), null)).toMatchObject({ kind: 'start by' })
@@ -50,16 +50,16 @@ describe('the next moment of a piece', () => {
   })
 
   it('lets nobody take anything out by the clock of a page cut off, but still asks for a check', () => {
-    const out = { at: hour(9), what: 'Glue up the box', out: 'clamps' as const }
+    const out = { stepId: 3, at: hour(9), what: 'Glue up the box', out: 'clamps' as const }
     expect(nextMoment(facts({ checks: [out] }), hour(9), hour(9) - 10 * minute)).toMatchObject({ kind: 'check', due: false })
     expect(nextMoment(facts({ checks: [{ ...out, out: null }] }), hour(9), hour(9) - 10 * minute)).toMatchObject({ kind: 'check', due: true })
   })
 })
 
 describe('the one moment of several pieces', () => {
-  const start = (at: number) => ({ kind: 'start by' as const, at, what: 'Second varnish', stepKind: 'coat' as const, shutsAt: null, pieces: null })
-  const begin = (at: number) => ({ kind: 'may begin' as const, at, what: 'Sanding', stepKind: 'light sanding' as const, open: false })
-  const check = (at: number, out: 'clamps' | null) => ({ kind: 'check' as const, at, what: 'Change the blotters', out, due: false })
+  const start = (at: number) => ({ kind: 'start by' as const, stepId: 1, at, what: 'Second varnish', stepKind: 'coat' as const, shutsAt: null, pieces: null })
+  const begin = (at: number) => ({ kind: 'may begin' as const, stepId: 1, at, what: 'Sanding', stepKind: 'light sanding' as const, open: false })
+  const check = (at: number, out: 'clamps' | null) => ({ kind: 'check' as const, stepId: 1, at, what: 'Change the blotters', out, due: false })
 
   it('is the earliest that hands must keep, and the latest that time has to bring', () => {
     expect(groupMoment([])).toBeNull()

@@ -10,7 +10,7 @@ import { hour, minute } from '../verdict/facts'
 
 const zone = studioZone('UTC')
 const clock = { now: hour(13.5), zone }
-const start = (some: number, all: number, at = hour(14) + 35 * minute): NextMoment => ({ kind: 'start by', at, what: 'Second varnish', stepKind: 'coat', shutsAt: hour(15) + 5 * minute, pieces: { some, all } })
+const start = (some: number, all: number, at = hour(14) + 35 * minute): NextMoment => ({ kind: 'start by', stepId: 1, at, what: 'Second varnish', stepKind: 'coat', shutsAt: hour(15) + 5 * minute, pieces: { some, all } })
 
 describe('next moments in words', () => {
   it('says the last moment to start, and the window only as its reason', () => {
@@ -24,7 +24,7 @@ describe('next moments in words', () => {
   })
 
   it('says what may begin, now or from when', () => {
-    const sanding = { kind: 'may begin' as const, at: hour(13) + 55 * minute, what: 'Sanding', stepKind: 'light sanding' as const }
+    const sanding = { kind: 'may begin' as const, stepId: 1, at: hour(13) + 55 * minute, what: 'Sanding', stepKind: 'light sanding' as const }
     expect(momentText({ ...sanding, open: false }, clock)).toBe('sand lightly from 13:55')
     expect(momentText({ ...sanding, open: true }, clock)).toBe('sand lightly')
     expect(momentReason({ ...sanding, open: true }, clock)).toBeNull()
@@ -32,11 +32,11 @@ describe('next moments in words', () => {
 
   it('says what the verdict gets better to, and checks', () => {
     expect(momentText({ kind: 'better', at: hour(14), what: 'hold by', grip: 'back' }, clock)).toBe('hold by the back from 14:00')
-    expect(momentText({ kind: 'check', at: hour(14), what: 'Change the blotters', out: null, due: false }, clock)).toBe('change the blotters at 14:00')
-    expect(momentText({ kind: 'check', at: hour(12), what: 'Change the blotters', out: null, due: true }, clock)).toBe('change the blotters now')
+    expect(momentText({ kind: 'check', stepId: 1, at: hour(14), what: 'Change the blotters', out: null, due: false }, clock)).toBe('change the blotters at 14:00')
+    expect(momentText({ kind: 'check', stepId: 1, at: hour(12), what: 'Change the blotters', out: null, due: true }, clock)).toBe('change the blotters now')
     // A taking out is never told too early: 13:02 reads as 13:05 where a check would read as 13:00.
-    expect(momentText({ kind: 'check', at: hour(13) + 2 * minute, what: 'Glue up', out: 'clamps', due: false }, clock)).toBe('take out of clamps from 13:05')
-    expect(momentText({ kind: 'check', at: hour(12), what: 'Glue up', out: 'weight', due: true }, clock)).toBe('take out from under the weight')
+    expect(momentText({ kind: 'check', stepId: 1, at: hour(13) + 2 * minute, what: 'Glue up', out: 'clamps', due: false }, clock)).toBe('take out of clamps from 13:05')
+    expect(momentText({ kind: 'check', stepId: 1, at: hour(12), what: 'Glue up', out: 'weight', due: true }, clock)).toBe('take out from under the weight')
   })
 })
 
