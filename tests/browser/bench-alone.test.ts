@@ -22,7 +22,7 @@ describe('a tablet left alone', () => {
     const shown = await page.locator('body').innerText()
     expect(shown).toContain('Caskets 1 and 2')
     // Nobody scrolls a locked tablet: however low the screen, it turns pages and the rooms to keep out of stay in sight.
-    await page.setViewportSize({ width: 1112, height: 480 })
+    await page.setViewportSize({ width: 1112, height: 320 })
     expect(await page.evaluate(() => document.documentElement.scrollHeight - innerHeight)).toBeLessThanOrEqual(1)
     expect(shown).not.toMatch(/Casket batch|paint|moss|hazel/i)
     expect(JSON.stringify((await tablet.get('/api/state?bench=1')).body)).not.toMatch(/Casket batch|Chalk-type paint|moss|hazel/)
