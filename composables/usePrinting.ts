@@ -11,13 +11,14 @@ export function usePrinting(address: () => string | null, { offered = papers, pa
   const route = useRoute()
   const url = useRequestURL()
   const { clock } = useStudioClock()
+  const { can } = useSession()
   const asked = offered.find(each => each === route.query.paper)
   const paper = ref<Paper>(asked ?? offered[0] ?? 'a4')
   // On the body: whatever stands beside the sheets, though it is nothing, would else be a sheet of another size after them.
   useHead({ bodyAttrs: { class: computed(() => `print-${page === 'card' ? 'card-' : ''}${paper.value}`) } })
   const options = offered.map(value => ({ value, label: printWords.papers[value] }))
   const origin = computed(() => address() ?? url.origin)
-  const warning = computed(() => loopback.test(new URL(origin.value).host) ? printWords.loopback(origin.value) : null)
+  const warning = computed(() => loopback.test(new URL(origin.value).host) ? printWords.loopback(origin.value, can('change settings')) : null)
   const day = (at: number) => dateText(at, clock.value)
   const time = (at: number) => clockTime(at, clock.value)
   const square = (text: string) => Math.round(100 * qrSquareMm(QrCode.create(text, { errorCorrectionLevel: 'M' }).modules.size)) / 100

@@ -1,5 +1,5 @@
 import { equilibriumMoisture } from '#shared/air/equilibrium'
-import { humidityRatio, rhFromDewPoint } from '#shared/air/psychrometrics'
+import { dewPoint, humidityRatio, rhFromDewPoint } from '#shared/air/psychrometrics'
 import { airAt, lastBefore } from '#shared/air/room'
 import type { RoomTrack } from '#shared/air/room'
 import { bandZ } from '#shared/drying/doubt'
@@ -58,6 +58,12 @@ export function courseDoubt({ tempC, dewPointC }: { tempC: number, dewPointC: nu
   const off = log / perKelvin
   return { tempC: [tempC - off, tempC + off], rh: [rhFromDewPoint(tempC + off, dewPointC), rhFromDewPoint(tempC - off, dewPointC)], pace: Math.exp(log) }
 }
+
+/** The dew point of some air in degrees Celsius as every page tells it: from the same figures, rounded the same way. Null for air without any water. */
+export const toldDewPoint = ({ tempC, rh }: { tempC: number, rh: number }) => (rh > 0 ? toFour(dewPoint(tempC, rh)) : null)
+
+/** Four places: rounding to a tenth afterwards says what rounding at once would say. */
+export const toFour = (value: number) => Math.round(value * 10_000) / 10_000
 
 /** A room's air at some instants (ms UTC) and what it does to films and board. Before the first reading there is nothing to draw; a forecast after `now` is not read. */
 export function airCourse(track: RoomTrack, times: readonly number[], tools: DryingTools, now = Infinity): CoursePoint[] {

@@ -5,7 +5,7 @@ import type { PieceStrip, StripMilestone, StripPlanned, StripWindow } from '#sha
 import { milestoneNames } from '#shared/terms'
 import type { Clock } from '#shared/time'
 import type { ReadPiece } from '#shared/verdict/piece'
-import { milestoneText, stepNoun } from '#shared/words/steps'
+import { milestoneText, stepLabel } from '#shared/words/steps'
 
 const hour = 3_600_000
 const day = 24 * hour
@@ -35,7 +35,7 @@ function windowOf(windows: readonly WindowPrediction[], now: number): StripWindo
 
 function plannedOf(piece: ReadPiece, now: number): StripPlanned[] {
   return piece.turns.flatMap(({ turn }) => turn.kind === 'work' && turn.status === 'waiting' && turn.plan && turn.plan.startsAt >= now
-    ? [{ at: turn.plan.startsAt, label: stepNoun(turn.step.kind, turn.step.name) }]
+    ? [{ at: turn.plan.startsAt, label: stepLabel(turn.step.kind, turn.step.name) }]
     : [])
 }
 

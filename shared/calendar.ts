@@ -4,7 +4,7 @@ import type { ReadPiece } from '#shared/verdict/piece'
 import { calendarWords } from '#shared/words/calendar'
 import { groupNames } from '#shared/words/group'
 import { momentText } from '#shared/words/moments'
-import { stepNoun } from '#shared/words/steps'
+import { stepLabel } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 
 /** One planned turn of a piece, with who is to do it. Instants in ms UTC. */
@@ -49,7 +49,7 @@ export function workEntries(turns: readonly PlannedTurn[], memberId: number | nu
     return [{
       key: `work-${Math.min(...members.map(each => each.turnId))}`,
       from: Math.min(...members.map(each => each.startsAt)), to: Math.max(...members.map(each => each.endsAt)),
-      title: title(first.check ?? stepNoun(first.kind, first.step), members.map(each => each.piece)),
+      title: title(first.check ?? stepLabel(first.kind, first.step), members.map(each => each.piece)),
       says: calendarWords.work(starts.length > 0 ? Math.min(...starts) : null, clock),
       place: places.length === 1 ? places[0] ?? null : null,
     }]

@@ -11,7 +11,7 @@ import { boardWords, dayNote, dueSince } from '#shared/words/board'
 import { groupNames } from '#shared/words/group'
 import { outTitle } from '#shared/words/hands'
 import { checkTimeText, startByText } from '#shared/words/moments'
-import { stepNoun } from '#shared/words/steps'
+import { stepLabel } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 
 /** The day ruler: what needs hands until the day ends, pegged to its hours. Instants in ms UTC. */
@@ -45,12 +45,12 @@ function sessionPegs(state: StudioState, byTurn: ReadonlyMap<number, Member>, cl
     const { step } = first.turn.turn
     const start = startOf(members, clock.now)
     const pressed = start !== null && start.at < until
-    return [{ key: `${step.kind} ${stepNoun(step.kind, step.name)} ${pressed ? session.id : ''}`, session, members, start: pressed ? start : null }]
+    return [{ key: `${step.kind} ${stepLabel(step.kind, step.name)} ${pressed ? session.id : ''}`, session, members, start: pressed ? start : null }]
   })
   return [...alike(works)].map(([key, { session, members, start }]): DayPeg => {
     const { step } = members[0]!.turn.turn
     return {
-      key, at: Math.max(session.startsAt, clock.now), title: titled(stepNoun(step.kind, step.name), members.map(({ piece }) => piece.piece.name)),
+      key, at: Math.max(session.startsAt, clock.now), title: titled(stepLabel(step.kind, step.name), members.map(({ piece }) => piece.piece.name)),
       ...start ? { says: startByText(start, clock), urgent: start.at - clock.now <= aboutToShutMs } : plainly(session.startsAt, members, clock),
     }
   })

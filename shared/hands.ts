@@ -9,6 +9,8 @@ import type { MilestoneName, TurnKind } from '#shared/terms'
 import type { FilmState, TurnState } from '#shared/schemas/piece-state'
 
 const minute = 60_000
+/** No time is told finer than this, ms. */
+const grain = 5 * minute
 /** Work planned to begin within so long counts as now. ms, planning value. */
 const soonMs = 30 * minute
 /** Pieces of one step that become ready further apart than this are separate jobs. ms, planning value. */
@@ -16,6 +18,9 @@ const apartMs = 60 * minute
 
 export const sections = ['now', 'today', 'days', 'waiting'] as const
 export type Section = typeof sections[number]
+
+/** An instant (ms UTC) that goes for some of the pieces of a job. */
+export interface OfThem { at: number, some: number }
 
 export interface JobPiece { read: ReadPiece, turn: ReadTurn }
 
@@ -39,6 +44,10 @@ export interface Job {
   /** The first planned start that passed so, ms UTC. */
   dueAt: number | null
   tests: MilestoneName | null
+  /** The first start that the plan has for its pieces, and for how many of them it is. */
+  first: OfThem | null
+  /** The window that shuts first, and of how many pieces it does about then. */
+  shuts: OfThem | null
   /** A film beneath is in doubt: tested or stripped before anything else. */
   doubtful: boolean
 }
@@ -116,6 +125,26 @@ function momentOf(pieces: readonly JobPiece[], now: number, heardAt: number | nu
 
 const least = (times: readonly number[]) => (times.length === 0 ? null : Math.min(...times))
 
+/** The first of some instants, with all that lie at most so much behind it (ms). */
+function firstOf(times: readonly number[], within: number): OfThem | null {
+  const at = least(times)
+  return at === null ? null : { at, some: times.filter(each => each <= at + within).length }
+}
+
+const isWork = ({ turn: { turn } }: JobPiece) => turn.kind === 'work' && turn.status === 'waiting'
+
+/** The first planned start: members of one session follow one another and count as beginning with it. */
+function firstStart(pieces: readonly JobPiece[]): OfThem | null {
+  const plans = pieces.filter(isWork).flatMap(each => each.turn.turn.plan ?? [])
+  const first = firstOf(plans.map(each => each.startsAt), 0)
+  if (first === null) return null
+  const sessions = new Set(plans.filter(each => each.startsAt === first.at).map(each => each.sessionId ?? `at ${each.startsAt}`))
+  return { at: first.at, some: plans.filter(each => sessions.has(each.sessionId ?? `at ${each.startsAt}`)).length }
+}
+
+/** The window that shuts first, of pieces that may begin in it. */
+const firstShut = (pieces: readonly JobPiece[], now: number) => firstOf(pieces.filter(isWork).flatMap(({ turn: { begin } }) => (begin.till !== null && begin.till > now ? [begin.till] : [])), grain)
+
 function jobOf(id: string, pieces: JobPiece[], clock: Clock, heardAt: number | null): Job | null {
   const first = pieces[0]?.turn
   const last = slowest(pieces)
@@ -125,21 +154,23 @@ function jobOf(id: string, pieces: JobPiece[], clock: Clock, heardAt: number | n
   const timed = phase === 'timed'
   const may = first.turn.kind === 'work' ? pieces.every(each => each.turn.begin.may) : first.turn.wantedAt !== null && first.turn.wantedAt <= now
   const pressing = pieces.some(each => each.turn.late !== null)
-  const starts = pieces.flatMap(each => planned(each.turn, now) ?? [])
   const dueAt = least(pieces.flatMap(each => (isDue(each.turn, now) && each.turn.turn.plan ? [each.turn.turn.plan.dueAt] : [])))
-  const at = !timed || starts.length === 0 ? null : Math.max(...starts)
+  const at = timed ? wantedOf(pieces, now) : null
   const urgent = pressing || dueAt !== null || phase.startsWith('doing') || phase === 'doubt' || phase === 'window shut'
   const moment = phase.startsWith('aside') || phase.startsWith('doing') ? null : momentOf(pieces, now, heardAt)
-  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due: dueAt !== null, dueAt, doubtful: phase === 'doubt', tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
+  return { id, kind: first.turn.kind, turn: first.turn, pieces, may, because: last.begin.because, at, moment, pressing, due: dueAt !== null, dueAt, first: firstStart(pieces), shuts: firstShut(pieces, now), doubtful: phase === 'doubt', tests: testedRung(last) ?? testedRung(first), section: sectionOf({ urgent, timed, may, at }, clock) }
 }
 
-/** When hands are wanted for one turn: once it may begin, and not before the plan wants it. */
-function planned(read: ReadTurn, now: number): number | null {
-  const from = wantedFrom(read)
-  // A check and a release are wanted at their own time, whatever else is planned.
-  const plan = read.turn.kind === 'work' ? read.turn.plan?.startsAt ?? null : null
-  if (from === null) return read.begin.may ? plan ?? now : null
-  return Math.max(from, plan ?? from)
+/**
+ * When hands are wanted: once the slowest may begin, and not before the first of their plans wants it. Null while nobody can say.
+ * A check and a release are wanted at their own time, whatever else is planned.
+ */
+function wantedOf(pieces: readonly JobPiece[], now: number): number | null {
+  const wanted = pieces.flatMap(({ turn }) => {
+    const from = wantedFrom(turn) ?? (turn.begin.may ? now : null)
+    return from === null ? [] : [{ from, plan: turn.turn.kind === 'work' ? turn.turn.plan?.startsAt ?? from : from }]
+  })
+  return wanted.length === 0 ? null : Math.max(...wanted.map(each => each.from), Math.min(...wanted.map(each => each.plan)))
 }
 
 function sectionOf({ urgent, timed, may, at }: { urgent: boolean, timed: boolean, may: boolean, at: number | null }, clock: Clock): Section {

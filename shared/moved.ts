@@ -8,8 +8,8 @@ export interface Moved { count: number, mostMs: number, newest: MovedRung[] }
 
 type Rung = FilmState['milestones'][number]
 
-/** Nobody plans by less. */
-const noticedMs = 60_000
+/** A shift of less is not told: times are said to five minutes, and nobody at a bench does otherwise for less. ms, planning value. */
+export const noticedShiftMs = 5 * 60_000
 
 const films = (state: StudioState) => new Map(state.pieces.flatMap(piece => piece.groups.flatMap(group => group.films)).map(film => [film.coatId, film]))
 
@@ -32,7 +32,7 @@ function movedRung(before: FilmState, after: FilmState): { before: Rung, after: 
   const was = new Map(before.milestones.map(each => [each.name, each]))
   const moved = after.milestones.flatMap((now) => {
     const then = was.get(now.name)
-    return then && now.reachedAt === null && then.p90At !== null && now.p90At !== null && Math.abs(now.p90At - then.p90At) >= noticedMs ? [{ before: then, after: now }] : []
+    return then && now.reachedAt === null && then.p90At !== null && now.p90At !== null && Math.abs(now.p90At - then.p90At) >= noticedShiftMs ? [{ before: then, after: now }] : []
   })
   return asked.flatMap(name => moved.find(each => each.after.name === name) ?? [])[0] ?? moved[0] ?? null
 }
@@ -61,7 +61,7 @@ export function movedFilms(before: StudioState, after: StudioState): Moved {
   const shifts = [...films(after).values()].flatMap((film) => {
     const then = known.get(film.coatId)
     const shift = then ? shiftOf(then, film) : 0
-    return Math.abs(shift) >= noticedMs ? [shift] : []
+    return Math.abs(shift) >= noticedShiftMs ? [shift] : []
   })
   return { count: shifts.length, mostMs: shifts.reduce((most, each) => Math.abs(each) > Math.abs(most) ? each : most, 0), newest: newestMoved(before, after) }
 }

@@ -3,7 +3,7 @@ import type { FilmState, TurnState } from '#shared/schemas/piece-state'
 import type { MilestonePrediction } from '#shared/drying/types'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
-import { milestoneText, stepNoun } from '#shared/words/steps'
+import { milestoneText, stepLabel } from '#shared/words/steps'
 
 const minute = 60_000
 const day = 24 * 60 * minute
@@ -56,7 +56,7 @@ export function filmStrip(film: FilmState, wanted: MilestoneName, turn: TurnStat
   const rung = rungOf(film, wanted)
   const windows = turn?.waits.some(each => each.windowed) ? film.windows.filter(each => each.shutsAt === null || each.shutsAt > now - day) : []
   const plannedAt = turn?.plan?.startsAt ?? null
-  const planned = turn && plannedAt !== null && plannedAt > now ? [{ at: plannedAt, label: stepNoun(turn.step.kind, turn.step.name) }] : []
+  const planned = turn && plannedAt !== null && plannedAt > now ? [{ at: plannedAt, label: stepLabel(turn.step.kind, turn.step.name) }] : []
   const ends = [now + 45 * minute, ...rung ? [rung.reachedAt ?? rung.p90At ?? rung.likelyAt ?? now] : [], ...windows.flatMap(each => (each.shutsAt === null ? [] : [each.shutsAt + 30 * minute])), ...planned.map(each => each.at + 30 * minute)]
   return {
     fromAt: Math.max(film.beganAt, now - mostBehind), toAt: Math.max(film.endedAt + 30 * minute, Math.min(now + mostAhead, Math.max(...ends))) + 15 * minute, nowAt: now, zone,

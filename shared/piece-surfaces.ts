@@ -4,7 +4,7 @@ import type { FilmState, GroupState, TurnState } from '#shared/schemas/piece-sta
 import type { PieceStrip } from '#shared/strip'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
-import { milestoneText, stepNoun } from '#shared/words/steps'
+import { milestoneText, stepLabel } from '#shared/words/steps'
 
 const minute = 60_000
 const day = 24 * 60 * minute
@@ -78,7 +78,7 @@ export function surfaceStrip(surface: Surface, turns: readonly TurnState[], now:
     return [{ label: milestoneText(name), likelyAt, giveTillAt: rung.reachedAt ?? rung.p90At }]
   })
   const windows = mine.some(turn => turn.waits.some(wait => wait.windowed)) ? top.windows.filter(each => (each.opensAt ?? 0) < now + mostAhead) : []
-  const planned = mine.flatMap(turn => (turn.plan && turn.plan.startsAt > now && turn.plan.startsAt < now + mostAhead ? [{ at: turn.plan.startsAt, label: stepNoun(turn.step.kind, turn.name || turn.step.name) }] : []))
+  const planned = mine.flatMap(turn => (turn.plan && turn.plan.startsAt > now && turn.plan.startsAt < now + mostAhead ? [{ at: turn.plan.startsAt, label: stepLabel(turn.step.kind, turn.name || turn.step.name) }] : []))
   const ends = [now + 45 * minute, ...milestones.map(each => Math.min(each.giveTillAt ?? each.likelyAt, now + mostAhead)), ...windows.flatMap(each => (each.shutsAt === null ? [] : [Math.min(each.shutsAt, now + mostAhead) + 30 * minute])), ...planned.map(each => each.at + 45 * minute)]
   const fromAt = Math.max(films.reduce((first, film) => Math.min(first, film.beganAt), top.beganAt), now - mostBehind)
   const coats = films.map((film) => {

@@ -4,13 +4,12 @@ import type { Database } from '~~/server/utils/database'
 import { roomAirs } from '~~/server/work/air'
 import { preparedMaterials } from '~~/server/work/materials'
 import { offsetAt } from '#shared/air/zone'
-import { airCourse, courseTimes } from '#shared/air-course'
+import { airCourse, courseTimes, toFour, toldDewPoint } from '#shared/air-course'
 import { trackRoom } from '#shared/drying/tools'
 import type { CourseSpan, RoomCourse } from '#shared/schemas/air'
 
 /** Figures to a hundredth: what no chart or table shows need not travel. */
 const rounded = (value: number) => Math.round(value * 100) / 100
-const toFour = (value: number) => Math.round(value * 10_000) / 10_000
 
 const pair = ([low, high]: [number, number], round: (value: number) => number): [number, number] => [round(low), round(high)]
 
@@ -23,7 +22,7 @@ export function airCourses(db: Database, studioId: number, span: CourseSpan, now
     const track = trackRoom(tools, air, now)
     const times = courseTimes(span, now, offsetAt(track.zone, now))
     const points = airCourse(track, times, tools, now).map(point => ({
-      ...point, tempC: rounded(point.tempC), rh: toFour(point.rh), dewPointC: rounded(point.dewPointC),
+      ...point, tempC: toFour(point.tempC), rh: toFour(point.rh), dewPointC: toldDewPoint(point) ?? toFour(point.dewPointC),
       boardMoisture: point.boardMoisture === null ? null : rounded(point.boardMoisture), speeds: point.speeds.map(rounded),
       doubt: point.doubt && { tempC: pair(point.doubt.tempC, rounded), rh: pair(point.doubt.rh, toFour), pace: rounded(point.doubt.pace) },
     }))

@@ -2,8 +2,7 @@ import { roomStates } from '~~/server/services/room-states'
 import { listImports } from '~~/server/services/reading-imports'
 import { listReadings } from '~~/server/services/readings'
 import type { Database } from '~~/server/utils/database'
-import { dewPoint } from '#shared/air/psychrometrics'
-import { boardMoisture, sheetAir } from '#shared/air-course'
+import { boardMoisture, sheetAir, toldDewPoint } from '#shared/air-course'
 import { driverRate } from '#shared/drying/rates'
 import { filmDrivers } from '#shared/schemas/air'
 import type { RoomAirState } from '#shared/schemas/air'
@@ -17,7 +16,7 @@ export function airNow(db: Database, studioId: number, now: number): RoomAirStat
     const { tempC, rh, readAt, assumed } = air
     return [{
       roomId: id, name, outdoor, heated, tempC, rh, readAt, assumed,
-      dewPointC: rh > 0 ? dewPoint(tempC, rh) : null,
+      dewPointC: toldDewPoint({ tempC, rh }),
       boardMoisture: boardMoisture({ tempC, rh }),
       speeds: filmDrivers.map(driver => ({ driver, factor: driverRate(driver, { tempC, rh }, sheetAir) })),
       notes: listReadings(db, studioId, id, notesShown, now, 'told').map(({ doubt: _doubt, ...note }) => note),

@@ -10,8 +10,8 @@ type Span = readonly [low: number, typical: number, high: number]
 export const hours = (low: number, typical: number, high: number): Span => [low * 60, typical * 60, high * 60]
 export const days = (low: number, typical: number, high: number): Span => [low * 1440, typical * 1440, high * 1440]
 
-export const sheet = (material: string): Sourced => ({ source: `maker's data sheet, ${material}, seen`, key: 'S' })
-export const support = (material: string): Sourced => ({ source: `maker's support letter, ${material}, seen`, key: 'S' })
+export const sheet = (material: string): Sourced => ({ source: `maker’s data sheet, ${material}, seen`, key: 'S' })
+export const support = (material: string): Sourced => ({ source: `maker’s support letter, ${material}, seen`, key: 'S' })
 export const article = (material: string): Sourced => ({ source: `trade article, ${material}, seen`, key: 'S' })
 export const tradePage = (material: string): Sourced => ({ source: `trade page, ${material}, seen`, key: 'S-' })
 export const practice: Sourced = { source: 'common practice', key: 'CP' }

@@ -5,7 +5,7 @@ export type CautionBasis = 'published' | 'published, check the data sheet' | 'co
 interface CautionText { text: string, basis: CautionBasis, scope: string }
 
 /** Said once after the cautions of a material or a step, never inside them. */
-export const cautionDeferral = 'Follow the product\'s safety data sheet and your local rules.'
+export const cautionDeferral = 'Follow the product’s safety data sheet and your local rules.'
 
 const health = {
   'vapour': {

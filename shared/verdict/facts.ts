@@ -1,11 +1,11 @@
 import type { MilestonePrediction } from '#shared/drying/types'
-import type { FilmState, GroupState, PartState, PieceState, RoomState, TurnState } from '#shared/schemas/piece-state'
+import type { FilmState, GroupState, PartState, PieceState, RoomState, SessionState, TurnState } from '#shared/schemas/piece-state'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
 import type { Film, Grip, Moment, PartFacts } from '#shared/verdict/types'
 
-/** What the verdict needs to know of the rooms and places besides the pieces. */
-export interface Whereabouts { rooms: readonly Pick<RoomState, 'id' | 'name' | 'keepOut'>[], places: readonly { id: number, name: string }[] }
+/** What the verdict needs to know of the rooms and places besides the pieces; and when the plan begins the sessions that the pieces' work lies in, where it is known. */
+export interface Whereabouts { rooms: readonly Pick<RoomState, 'id' | 'name' | 'keepOut'>[], places: readonly { id: number, name: string }[], sessions?: readonly Pick<SessionState, 'id' | 'startsAt'>[] }
 
 /**
  * The facts the verdict is read from, one list for each group of parts that move together.

@@ -5,8 +5,8 @@ import type { Verdict, VerdictKind } from '#shared/verdict/types'
 /** The last moment to start a step, ms UTC, counted back from a window's early end at `shutsAt`. `pieces`: how many of how many can then still be done. */
 export interface LastStart { stepId: number, stepKind: StepKind, at: number, what: string, shutsAt: number | null, pieces: { some: number, all: number } | null }
 
-/** When a waiting step may begin (`MayBegin.from`), ms UTC. `what` is the step's name. */
-export interface Beginning { stepId: number, stepKind: StepKind, at: number, what: string }
+/** When a waiting step may begin (`MayBegin.from`) and when the plan begins it, null without one, ms UTC. `what` is the step's name. */
+export interface Beginning { stepId: number, stepKind: StepKind, at: number, what: string, plannedAt: number | null }
 
 /** An attended check inside a rest, or the taking out of what holds it (`out`), ms UTC. `what` says what to do: "change the blotters". */
 export interface DueCheck { stepId: number, at: number, what: string, out: Hold | null }
@@ -22,7 +22,7 @@ export interface NextFacts {
 /** `stepId`: what it is done for. `what` is the name of the step or check, or what the verdict gets better to. `open` and `due`: already so. */
 export type NextMoment =
   | { kind: 'start by', stepId: number, at: number, what: string, stepKind: StepKind, shutsAt: number | null, pieces: { some: number, all: number } | null }
-  | { kind: 'may begin', stepId: number, at: number, what: string, stepKind: StepKind, open: boolean }
+  | { kind: 'may begin', stepId: number, at: number, what: string, stepKind: StepKind, open: boolean, plannedAt: number | null }
   | { kind: 'better', at: number, what: VerdictKind, grip: string | null }
   | { kind: 'check', stepId: number, at: number, what: string, out: Hold | null, due: boolean }
 
@@ -55,7 +55,7 @@ export function nextMoment(facts: NextFacts, now: number, heardAt: number | null
   const moments: NextMoment[] = [
     ...starts.map(({ stepId, at, what, stepKind, shutsAt, pieces }) => ({ kind: 'start by' as const, stepId, at, what, stepKind, shutsAt, pieces })),
     ...facts.mayBegins.filter(({ stepId, at }) => at > now || !pressed.has(stepId))
-      .map(({ stepId, at, what, stepKind }) => ({ kind: 'may begin' as const, stepId, at, what, stepKind, open: at <= lifting })),
+      .map(({ stepId, at, what, stepKind, plannedAt }) => ({ kind: 'may begin' as const, stepId, at, what, stepKind, open: at <= lifting, plannedAt })),
     ...betterAt !== null && betterKind ? [{ kind: 'better' as const, at: betterAt, what: betterKind, grip: betterGrip }] : [],
     ...facts.checks.map(({ stepId, at, what, out }) => ({ kind: 'check' as const, stepId, at, what, out, due: at <= (out === null ? now : lifting) })),
   ]
@@ -64,11 +64,12 @@ export function nextMoment(facts: NextFacts, now: number, heardAt: number | null
 }
 
 /**
- * One moment for a line about several pieces: of last moments to start the earliest, of checks too; of what time has to
+ * One moment for a line about several pieces: of last moments to start the earliest, of equals the one whose window shuts first, of checks the earliest; of what time has to
  * bring about, the latest, for the slowest piece speaks for all. Null for none.
  */
 export function groupMoment(moments: readonly NextMoment[]): NextMoment | null {
   const press = (moment: NextMoment) => (moment.kind === 'start by' ? 0 : moment.kind === 'check' && moment.out === null ? 1 : 2)
-  const before = (a: NextMoment, b: NextMoment) => press(a) - press(b) || (press(a) === 2 ? b.at - a.at : a.at - b.at)
+  const shut = (moment: NextMoment) => (moment.kind === 'start by' ? moment.shutsAt ?? Number.MAX_VALUE : 0)
+  const before = (a: NextMoment, b: NextMoment) => press(a) - press(b) || (press(a) === 2 ? b.at - a.at : a.at - b.at || shut(a) - shut(b))
   return [...moments].sort(before)[0] ?? null
 }

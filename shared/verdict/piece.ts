@@ -31,7 +31,7 @@ export function readPiece(piece: PieceState, where: Whereabouts, now: number, he
   const verdict = groupVerdict(groups.map(each => each.verdict)) ?? nowhere
   const turns = piece.turns.map(turn => readTurn(piece, turn, where, now, heardAt, who))
   const anybody = who === null ? turns : piece.turns.map(turn => readTurn(piece, turn, where, now, heardAt, null))
-  const next = nextMoment({ verdict, lastStarts: lastStarts(anybody), mayBegins: beginnings(anybody, now), checks: checks(anybody) }, now, heardAt)
+  const next = nextMoment({ verdict, lastStarts: lastStarts(anybody), mayBegins: beginnings(anybody, now, where.sessions ?? []), checks: checks(anybody) }, now, heardAt)
   return { piece, verdict, groups, turns, next }
 }
 
@@ -65,7 +65,7 @@ function goesOn({ step }: TurnState, operatorId: number | null, who: Who): boole
 
 /** The next moment of one turn alone, for a list of work: chosen as a piece's own is, without its verdict. */
 export function turnMoment(turn: ReadTurn, now: number, heardAt: number | null): NextMoment | null {
-  const facts = { verdict: noVerdict, lastStarts: lastStarts([turn]), mayBegins: beginnings([turn], now), checks: checks([turn]) }
+  const facts = { verdict: noVerdict, lastStarts: lastStarts([turn]), mayBegins: beginnings([turn], now, null), checks: checks([turn]) }
   return nextMoment(facts, now, heardAt)
 }
 
@@ -78,7 +78,7 @@ export function startMoment(turn: ReadTurn, now: number): StartBy | null {
 
 /** From when one turn may be gone on with, whatever presses it; null while nobody can say. ms as for `readPiece`. */
 export function beginMoment(turn: ReadTurn, now: number): NextMoment | null {
-  const facts = { verdict: noVerdict, lastStarts: [], mayBegins: beginnings([turn], now), checks: checks([turn]) }
+  const facts = { verdict: noVerdict, lastStarts: [], mayBegins: beginnings([turn], now, null), checks: checks([turn]) }
   return nextMoment(facts, now, null)
 }
 
@@ -95,11 +95,12 @@ function lastStarts(turns: readonly ReadTurn[]): LastStart[] {
   })
 }
 
-function beginnings(turns: readonly ReadTurn[], now: number): Beginning[] {
+/** `sessions` null: what the plan has in mind is not asked. Like work of one session is planned as one, so that pieces alike are told alike. */
+function beginnings(turns: readonly ReadTurn[], now: number, sessions: NonNullable<Whereabouts['sessions']> | null): Beginning[] {
   return turns.flatMap(({ turn, begin }) => {
     if (turn.kind !== 'work' || turn.status !== 'waiting') return []
     const at = begin.may ? Math.min(begin.from ?? now, now) : begin.from
-    return at === null ? [] : [{ stepId: turn.step.id, stepKind: turn.step.kind, at, what: turn.step.name }]
+    return at === null ? [] : [{ stepId: turn.step.id, stepKind: turn.step.kind, at, what: turn.step.name, plannedAt: sessions && turn.plan && (sessions.find(each => each.id === turn.plan?.sessionId) ?? turn.plan).startsAt }]
   })
 }
 

@@ -46,7 +46,7 @@ export function adviceText(facts: AdviceFacts, units: Units = 'metric'): string 
     case 'too-damp': return `At ${percent(facts.ceiling)} humidity or more no time is promised: dry the room${warmer(facts.warmC, units)}, to get under it.`
     case 'dry-air': return `The air holds less than ${Number((facts.floor * 1000).toFixed(1))} g of water in a kilogram: this cures from moisture and hardly moves.`
     case 'blush': return `${hazeReason(facts, units)} Wait, put retarder in, or go on and watch for haze.`
-    case 'outside-measured': return `This coat is ${Number(facts.slowness.toFixed(1))} times slower than the sheet's: outside what anybody has measured.`
+    case 'outside-measured': return `This coat is ${Number(facts.slowness.toFixed(1))} times slower than the sheet’s: outside what anybody has measured.`
     case 'outside-sheet': return 'Over three times the longest on the sheet: something is wrong with this coat.'
     case 'fan-early': return facts.when === null ? 'Keep the fan off until it is tack-free.' : `Keep the fan off until it is tack-free, ${facts.when}.`
     case 'covered-early': return `It takes air to harden: do not cover it before ${facts.when}, two days after it went on.`
@@ -68,7 +68,7 @@ export function beforeText(facts: AdviceFacts, units: Units = 'metric'): string 
     case 'too-damp': return `At ${percent(facts.ceiling)} humidity or more this is not to go on: dry the room first${warmer(facts.warmC, units)}.`
     case 'dry-air': return `The air holds less than ${Number((facts.floor * 1000).toFixed(1))} g of water in a kilogram: this cures from moisture and would hardly move. Damp one face, or the room.`
     case 'blush': return `${hazeReason(facts, units)} Wait, or put retarder in and watch for haze.`
-    case 'outside-measured': return `A coat of this kind here is ${Number(facts.slowness.toFixed(1))} times slower than the sheet's: nobody has measured that.`
+    case 'outside-measured': return `A coat of this kind here is ${Number(facts.slowness.toFixed(1))} times slower than the sheet’s: nobody has measured that.`
     case 'fan-early': case 'outside-sheet': case 'forced-drying': case 'covered-early': return null
   }
 }

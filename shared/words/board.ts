@@ -2,6 +2,7 @@ import { ago, clockTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { PlaceState, RoomState } from '#shared/schemas/piece-state'
 import type { Verdict } from '#shared/verdict/types'
+import { humidityText, temperatureText } from '#shared/units'
 import { listText } from '#shared/words/group'
 import { lowerFirst } from '#shared/words/steps'
 import { verdictReason, verdictTitle } from '#shared/words/verdict'
@@ -41,18 +42,11 @@ export const legendWords = {
   press: 'Press a piece for its drying strip.',
 } as const
 
-const percent = (share: number) => `${Math.round(share * 100)} %`
-
-/** "19.4 °C", "67 °F". */
-export function warmth(tempC: number, units: 'metric' | 'us'): string {
-  return units === 'us' ? `${Math.round(tempC * 9 / 5 + 32)} °F` : `${Math.round(tempC * 10) / 10} °C`
-}
-
 /** "19.4 °C, 61 %, read 12 min ago. Water-based coats dry at 0.78 of sheet speed." `speed` null where nothing water-based is drying. */
 export function airText(air: RoomState['air'], speed: number | null, units: 'metric' | 'us', now: number): string {
   if (air === null) return 'Nobody has read the air here.'
   const read = air.readAt === null ? 'nobody has read it: the studio’s usual air' : `read ${ago(air.readAt, now)}`
-  return [`${warmth(air.tempC, units)}, ${percent(air.rh)}, ${read}.`, ...speed === null ? [] : [speedText(speed)]].join(' ')
+  return [`${temperatureText(air.tempC, units)}, ${humidityText(air.rh)}, ${read}.`, ...speed === null ? [] : [speedText(speed)]].join(' ')
 }
 
 function speedText(speed: number): string {
@@ -93,11 +87,11 @@ export function swatchText(verdict: Verdict, clock: Clock, parts = ''): string {
 /** The key that opens the reading of a tag. */
 export const scanKey = 'Scan a tag'
 
-/** ", spine" for a part that stands apart from its piece; ", 3 parts" for several that do. */
+/** ", spine" for a part that stands apart from its piece; " (3 parts)" for several that do. */
 export function partsSuffix(parts: readonly string[]): string {
   const [first] = parts
   if (first === undefined) return ''
-  return parts.length === 1 ? `, ${lowerFirst(first)}` : `, ${parts.length} parts`
+  return parts.length === 1 ? `, ${lowerFirst(first)}` : ` (${parts.length} parts)`
 }
 
 /** The rest of the day's work, in one peg. */

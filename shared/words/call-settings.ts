@@ -1,5 +1,5 @@
 import { cautionParts } from '#shared/library/caution-parts'
-import type { CallKind, Channel, RagAnswer } from '#shared/terms'
+import type { CallKind, Channel } from '#shared/terms'
 
 /** What Settings says about calls: where they go, which are on, and what became of them. */
 export const callSettings = {
@@ -47,7 +47,6 @@ export const callSettings = {
     gone: 'nobody there',
     failed: 'not sent',
   },
-  ragAnswers: { 'flat outdoors': 'Flat outdoors', 'in water can': 'In the water can', 'not dealt with': 'Not dealt with' } satisfies Record<RagAnswer, string>,
   tryAgainAt: (time: string) => `Next try ${time}.`,
   loading: 'Looking up the calls',
   notLoaded: 'The calls could not be looked up.',
@@ -63,8 +62,8 @@ export const pushStates = {
   'not supported': 'This browser cannot be called. Some phones can once the page is put on their home screen. Mail still reaches you.',
   'needs https': 'Calls to a browser need an https address. This page was opened over plain http: ask whoever runs the server for a certificate, or rely on mail.',
   'no service worker': 'The part of the page that receives calls did not start. Private windows often refuse it. Load the page again, or use another browser.',
-  'push service unreachable': 'The browser could not reach its maker\'s push service. Check the connection, then press again.',
-  'server refused': 'The studio did not take this browser\'s address.',
+  'push service unreachable': 'The browser could not reach its maker’s push service. Check the connection, then press again.',
+  'server refused': 'The studio did not take this browser’s address.',
   'server not reached': 'The studio cannot be reached. Press again in a moment.',
 } as const
 

@@ -1,5 +1,6 @@
 import { cautionParts } from '#shared/library/caution-parts'
 import { cautionDeferral } from '#shared/library/cautions'
+import { ragAnswersListed, ragAnswerTexts } from '#shared/words/rags'
 import { asSentence } from '#shared/words/verdict'
 
 /** Every sentence of the calls: what a notification and a mail say. Times arrive as words. */
@@ -44,7 +45,7 @@ export const callWords = {
   rags: {
     title: 'Where are the oily rags?',
     body: (room: string, last: string) => `${room}, last oil at ${last}. ${cautionParts.ragsHeat} ${cautionParts.ragsWhere} ${cautionParts.ragsAll} We ask again until somebody answers. ${cautionDeferral}`,
-    sayWhere: 'Say where the rags are: flat outdoors, in the water can, or not dealt with.',
+    sayWhere: `Say where the rags are: ${ragAnswersListed}.`,
     answeredAlready: 'Somebody has answered for these rags already.',
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
   },
@@ -67,8 +68,8 @@ export const callWords = {
     coatOn: 'Coat is on',
     stillTacky: 'Still tacky',
     dryEnough: 'Dry enough',
-    flatOutdoors: 'Flat outdoors',
-    inWaterCan: 'In the water can',
+    flatOutdoors: ragAnswerTexts['flat outdoors'],
+    inWaterCan: ragAnswerTexts['in water can'],
     unreadableTitle: 'A call from the studio',
     unreadableBody: 'It could not be read here. Look at the board.',
   },

@@ -23,7 +23,7 @@ export const entry = {
   firstStudioIntro: 'Give the studio a name and yourself a way in. Rooms, shelves and people come next, under Settings.',
   studioName: 'Name of the studio',
   zone: 'Time zone',
-  zoneHint: 'All times are shown by the clock on this studio\'s wall.',
+  zoneHint: 'All times are shown by the clock on this studio’s wall.',
   makeStudioAct: 'Make the studio',
   join: 'You are invited',
   joinTo: (studio: string, role: string) => `${studio} asks you in as ${role}.`,

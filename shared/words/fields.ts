@@ -1,3 +1,5 @@
+import { ragAnswersListed } from '#shared/words/rags'
+
 /** What a field wants, said when it did not get it. */
 export const fields = {
   email: 'Give an e-mail address, such as name@example.org.',
@@ -56,5 +58,5 @@ export const fields = {
   area: 'The surface is a number of square metres above 0, or empty.',
   airChanges: 'Air changes are a number from 0 to 500 an hour, or empty when unknown.',
   airMoves: 'Say how the air is moved: a measured fan, a fan and windows, or windows only.',
-  ragAnswer: 'Say where the rags are: flat outdoors, in water can, or not dealt with.',
+  ragAnswer: `The answer about the rags is one of these: ${ragAnswersListed}.`,
 } as const

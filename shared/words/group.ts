@@ -16,6 +16,9 @@ export function listText(words: readonly string[]): string {
   return words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`
 }
 
+/** Word joiner: a line may break behind a dash, and "Ledgers 1–" alone says nothing. */
+const joiner = '\u2060'
+
 /** 1, 2, 3, 5 as "1–3" and "5"; two in a row stay two. */
 function runsOf(numbers: readonly number[]): string[] {
   const runs: [number, number][] = []
@@ -24,7 +27,7 @@ function runsOf(numbers: readonly number[]): string[] {
     if (last && no === last[1] + 1) last[1] = no
     else runs.push([no, no])
   }
-  return runs.flatMap(([from, to]) => (from === to ? [String(from)] : to === from + 1 ? [String(from), String(to)] : [`${from}–${to}`]))
+  return runs.flatMap(([from, to]) => (from === to ? [String(from)] : to === from + 1 ? [String(from), String(to)] : [`${from}–${joiner}${to}`]))
 }
 
 /**

@@ -1,4 +1,4 @@
-import { cautionParts } from '#shared/library/caution-parts'
+import { noticedShiftMs } from '#shared/moved'
 import type { Job, Section } from '#shared/hands'
 import type { StillToday } from '#shared/hands-today'
 import type { Clock } from '#shared/time'
@@ -8,15 +8,15 @@ import type { Hold, MilestoneName } from '#shared/terms'
 import type { ReasonCode } from '#shared/drying/types'
 import type { StartBy } from '#shared/verdict/next'
 import { groupNames, listText } from '#shared/words/group'
-import { beginReason, firstFewText, momentReason, momentText } from '#shared/words/moments'
-import { lowerFirst, milestoneText } from '#shared/words/steps'
+import { aboutText, beginReason, firstFewText, late, momentReason, startByText } from '#shared/words/moments'
+import { lowerFirst, milestoneText, titled } from '#shared/words/steps'
 import { asSentence, limitText, predictionReason } from '#shared/words/verdict'
 
 /** What the screen of the hands says by itself. */
 export const handsWords = {
   title: 'Hands',
   more: 'More',
-  moreOf: (title: string) => `More about ${lowerFirst(title)}`,
+  moreOf: (title: string) => `More about ${titled(title)}`,
   stopped: 'Stopped, not done',
   run: 'There is a run',
   runHint: 'It goes its own way: filled, levelled, then back to the others.',
@@ -104,8 +104,8 @@ export function jobMoment(job: Job, film: FilmState | null, clock: Clock): strin
   const start = moment?.kind === 'start by' ? startOf(moment, job, clock) : null
   if (job.dueAt !== null) return [asSentence(`due since ${clockTime(job.dueAt, clock)}: is it on`).replace(/\.$/, '?'), ...start ? [start] : []].join(' ')
   if (start) return start
-  if (job.may) return asSentence(plannedText(job, clock) ?? 'may begin')
-  if (moment && !job.may && because.code !== 'role') return asSentence(`${momentText(moment, clock)}; ${beginReason(because)}`)
+  if (job.may) return asSentence([plannedText(job, clock) ?? 'may begin', ...shutText(job, clock)].join('; '))
+  if (moment && because.code !== 'role') return asSentence([aboutText(moment, clock), ...shutText(job, clock), beginReason(because)].join('; '))
   return asSentence(beginReason(because))
 }
 
@@ -116,12 +116,19 @@ function startOf(moment: StartBy, job: Job, clock: Clock): string {
   const waits = job.may || job.because.code === 'role' ? [] : [beginReason(job.because)]
   const plan = job.pieces.map(each => each.turn.turn.plan).find(each => each && each.firstFew !== null && each.lastStartFewAt !== null && each.lastStartFewAt > moment.at)
   const few = moment.at >= clock.now && plan?.firstFew && plan.lastStartFewAt ? `, ${firstFewText(plan.firstFew, plan.lastStartFewAt, clock)}` : ''
-  return asSentence([`${momentText(moment, clock)}${few}${here}`, ...why ? [why] : [], ...waits].join('; '))
+  return asSentence([`${startByText(moment, clock)}${few}${here}`, ...why ? [why] : [], ...waits].join('; '))
 }
 
-function plannedText({ turn, at }: Job, clock: Clock): string | null {
-  if (!turn.plan || at === null || at <= clock.now) return null
-  return `may begin; planned for ${roughTime(at, clock, 'down')}`
+/** "may begin; planned for 14:00, 2 of 6 then": pieces of one step may lie in several plans, and the first of them speaks. */
+function plannedText({ first, pieces }: Job, clock: Clock): string | null {
+  if (first === null || first.at <= clock.now) return null
+  return `may begin; planned for ${roughTime(first.at, clock, 'down')}${first.some < pieces.length ? `, ${first.some} of ${pieces.length} then` : ''}`
+}
+
+/** "the window of 2 of 6 shuts at 15:05": the first that shuts, where one presses and no last moment to start says it already. */
+function shutText({ shuts, pressing, pieces }: Job, clock: Clock): string[] {
+  if (!pressing || shuts === null) return []
+  return [`the window${shuts.some < pieces.length ? ` of ${shuts.some} of ${pieces.length}` : ''} shuts at ${roughTime(shuts.at, clock, 'down')}`]
 }
 
 /** "Start by 15:20 to do all 12 before 17:00.", or how many there is still time for. */
@@ -146,9 +153,12 @@ export function dustText(names: readonly string[]): string {
 /** What an act did to a time, with what it was before: "Ready to recoat: likely 16:20, give it till 17:05; before, likely 15:50". */
 export interface Effect { milestone: MilestoneName, likelyAt: number | null, p90At: number | null, reachedAt: number | null, reason: ReasonCode | null }
 
+/** Whether a time has moved so far that it is told; one that came or went always is. */
+const isShift = (before: number | null, after: number | null) => (before === null || after === null ? before !== after : Math.abs(after - before) >= noticedShiftMs)
+
 export function effectText(after: Effect, before: Effect | null, clock: Clock): string {
   const said = asSentence(`${milestoneText(after.milestone)}: ${timesText(after, clock)}`)
-  const moved = before !== null && before.milestone === after.milestone && (before.likelyAt !== after.likelyAt || before.p90At !== after.p90At) && before.reachedAt === null
+  const moved = before !== null && before.milestone === after.milestone && before.reachedAt === null && (isShift(before.likelyAt, after.likelyAt) || isShift(before.p90At, after.p90At))
   if (!moved) return said
   const was = timesText(before, clock)
   return was === timesText(after, clock) ? said : `${said} It was ${was}.`
@@ -174,7 +184,7 @@ export const toldWords = {
   later: 'The studio was not reached. It is kept on this device and told as soon as it can be.',
   again: 'Say it again',
   leave: 'Leave it',
-  next: (moment: string) => `Next: ${moment}.`,
+  next: (moment: string) => (moment.startsWith(late) ? asSentence(moment) : `Next: ${moment}.`),
   notReached: 'The studio was not reached. Nothing has changed; try again in a moment.',
   drop: 'Take back',
   dropLabel: (fact: string, names: string) => `Take back: ${fact}, ${names}`,
@@ -182,11 +192,4 @@ export const toldWords = {
   untoldSays: 'They are kept on this device and told in their order as soon as the studio is reached.',
   tellNow: 'Tell them now',
   refusedSays: (names: string, message: string) => `${names}: ${message}`,
-} as const
-
-/** Oily rags, asked until somebody says. */
-export const ragWords = {
-  ask: (room: string) => `Where are the oily rags from ${room}?`,
-  since: (time: string) => `Oil was last on the rags: ${time}. ${cautionParts.ragsHeat} ${cautionParts.ragsAll}`,
-  answers: { 'flat outdoors': 'Spread flat outdoors', 'in water can': 'In the water can', 'not dealt with': 'Not dealt with yet' },
 } as const

@@ -71,10 +71,17 @@ const names: Record<FigureName, string> = {
 }
 export const figureName = (name: FigureName) => names[name]
 
-const keys: Record<SourceKey, string> = { 'S': 'read', 'S-': 'read, second hand', 'M': 'from memory, not checked', 'CP': 'common practice', 'calc': 'worked out', 'planning value': 'a planning value of ours', 'own': 'the studio’s own' }
+/** How well a source is known that does not name a paper somebody has read. */
+const keys: Record<Exclude<SourceKey, 'S' | 'S-'>, string> = { 'M': 'from memory, not checked', 'CP': 'common practice', 'calc': 'worked out', 'planning value': 'a planning value of ours', 'own': 'the studio’s own' }
 
-/** "maker's data sheet, wood glue, seen (read)". */
-export const sourceText = ({ source, key }: { source: string, key: SourceKey }) => source === keys[key] || (key === 'planning value' && source === 'planning value') ? keys[key] : `${source} (${keys[key]})`
+/** "maker’s data sheet, wood glue, seen"; how well it is known is added only where the source does not say so itself. */
+export function sourceText({ source, key }: { source: string, key: SourceKey }): string {
+  if (key === 'S') return source
+  if (key === 'S-') return `${source} (second hand)`
+  if (key === 'planning value' && source === 'planning value') return keys[key]
+  const [first = ''] = keys[key].split(',')
+  return source.includes(first) ? source : `${source} (${keys[key]})`
+}
 
 /** A time from 10 seconds to a year, as a sheet would say it: "20 min", "4 h", "36 h", "3 days". Minutes. */
 export function sheetTime(minutes: number): string {
@@ -85,7 +92,13 @@ export function sheetTime(minutes: number): string {
 
 /** "1 h, between 30 min and 2 h". */
 export function timeRange({ low, typical, high }: { low: number, typical: number, high: number }): string {
-  return low === high ? sheetTime(typical) : `${sheetTime(typical)}, between ${sheetTime(low)} and ${sheetTime(high)}`
+  return low === high ? sheetTime(typical) : `${sheetTime(typical)}, ${betweenText(sheetTime(low), sheetTime(high))}`
+}
+
+/** "between 50 and 120 µm": a unit that both ends share is said once. */
+function betweenText(low: string, high: string): string {
+  const [, figure, unit] = /^(\S+) (\D+)$/.exec(low) ?? []
+  return `between ${unit !== undefined && figure !== undefined && high.replace(/^\S+ /, '') === unit ? figure : low} and ${high}`
 }
 
 const figure = (value: number) => String(Number(value.toPrecision(3)))
@@ -104,10 +117,10 @@ function oneFigure(value: number, unit: string, units: Units): string {
   }
 }
 
-/** A figure of the sheet in the studio's units: "80 µm, between 50 µm and 120 µm". */
+/** A figure of the sheet in the studio's units: "80 µm, between 50 and 120 µm". */
 export function figureText({ low, typical, high, unit }: { low: number | null, typical: number, high: number | null, unit: string }, units: Units): string {
   const middle = oneFigure(typical, unit, units)
-  return low === null || high === null || low === high ? middle : `${middle}, between ${oneFigure(low, unit, units)} and ${oneFigure(high, unit, units)}`
+  return low === null || high === null || low === high ? middle : `${middle}, ${betweenText(oneFigure(low, unit, units), oneFigure(high, unit, units))}`
 }
 
 interface WindowEnds { fromMin: number | null, toMin: number | null, recovery: string | null }

@@ -1,6 +1,6 @@
 import { clockTime, roughTime } from '#shared/time'
 import { betterText, predictionReason } from '#shared/words/verdict'
-import { lowerFirst, milestoneText, stepAct, stepNoun } from '#shared/words/steps'
+import { lowerFirst, milestoneText, stepAct, stepNoun, titled } from '#shared/words/steps'
 import type { BeginReason, StepState } from '#shared/verdict/begin'
 import type { NextMoment, StartBy } from '#shared/verdict/next'
 import type { Clock } from '#shared/time'
@@ -8,15 +8,18 @@ import type { DoubtCause, Hold, StepKind, StepStatus } from '#shared/terms'
 
 function piecesText(pieces: StartBy['pieces']): string {
   if (pieces === null || pieces.all === 1) return ''
-  if (pieces.some < pieces.all) return ` to do the first ${pieces.some} of ${pieces.all}`
+  if (pieces.some < pieces.all) return ` to do the first ${pieces.some === 1 ? '' : `${pieces.some} `}of ${pieces.all}`
   return pieces.all === 2 ? ' to do both' : ` to do all ${pieces.all}`
 }
 
 const byText = ({ at, pieces }: StartBy, clock: Clock) => `by ${at < clock.now ? clockTime(at, clock) : roughTime(at, clock, 'down')}${piecesText(pieces)}`
 
+/** What a last moment that has gone by begins with. */
+export const late = 'late: '
+
 function startText(start: StartBy, clock: Clock): string {
   const noun = stepNoun(start.stepKind, start.what)
-  return start.at < clock.now ? `late: ${noun} was to start ${byText(start, clock)}` : `start ${noun} ${byText(start, clock)}`
+  return start.at < clock.now ? `${late}${noun} was to start ${byText(start, clock)}` : `start ${noun} ${byText(start, clock)}`
 }
 
 /** "by 14:35 for the first 4": as many as can still be done when the last moment for all is over. */
@@ -24,7 +27,7 @@ export const firstFewText = (count: number, at: number, clock: Clock, doubtMs?: 
 
 /** "start by 14:35 to do both", where the line says already what. */
 export function startByText(start: StartBy, clock: Clock): string {
-  return start.at < clock.now ? `late: was to start ${byText(start, clock)}` : `start ${byText(start, clock)}`
+  return start.at < clock.now ? `${late}was to start ${byText(start, clock)}` : `start ${byText(start, clock)}`
 }
 
 type Check = Extract<NextMoment, { kind: 'check' }>
@@ -42,13 +45,29 @@ function checkText(check: Check, clock: Clock): string {
   return check.due ? takeOut[check.out] : `${takeOut[check.out]} ${checkTimeText(check, clock)}`
 }
 
+/** Sooner than this a planned start is now. ms, planning value. */
+const soonMs = 5 * 60_000
+
+/** " from now, planned 15:40" of what may begin though the plan has it later: neither time alone would be true. */
+const plannedLater = (plannedAt: number | null, clock: Clock) => (plannedAt === null || plannedAt - clock.now < soonMs ? '' : ` from now, planned ${roughTime(plannedAt, clock, 'down')}`)
+
+/** A next moment where the line says already what it is about: "start by 14:35", "from 13:55", "now". */
+export function aboutText(moment: NextMoment, clock: Clock): string {
+  switch (moment.kind) {
+    case 'start by': return startByText(moment, clock)
+    case 'may begin': return `from ${moment.open ? 'now' : roughTime(moment.at, clock, 'up')}`
+    case 'better': return momentText(moment, clock)
+    case 'check': return checkTimeText(moment, clock)
+  }
+}
+
 /** The next moment of a piece: "sand lightly from 13:55", "start second varnish by 14:35 to do both", "hold by the back from 15:20". */
 export function momentText(moment: NextMoment, clock: Clock): string {
   switch (moment.kind) {
     case 'start by': return startText(moment, clock)
     case 'may begin': {
       const act = stepAct(moment.stepKind, moment.what)
-      return moment.open ? act : `${act} from ${roughTime(moment.at, clock, 'up')}`
+      return moment.open ? `${act}${plannedLater(moment.plannedAt, clock)}` : `${act} from ${roughTime(moment.at, clock, 'up')}`
     }
     case 'better': return betterText({ betterAt: moment.at, betterKind: moment.what, betterGrip: moment.grip }, clock) ?? ''
     case 'check': return checkText(moment, clock)
@@ -82,13 +101,13 @@ export function beginReason(reason: BeginReason): string {
     case 'may begin': return 'may begin'
     case 'not waiting': return notWaiting[reason.status]
     case 'doubt': return doubts[reason.cause]
-    case 'waits for': return `waits for ${lowerFirst(reason.step)}`
-    case 'held': return `${lowerFirst(reason.step)} is still ${holds[reason.hold]}`
-    case 'unknown film': return `nobody knows when ${lowerFirst(reason.step)} is dry: only after a touch test`
+    case 'waits for': return `waits for ${titled(reason.step)}`
+    case 'held': return `${titled(reason.step)} is still ${holds[reason.hold]}`
+    case 'unknown film': return `nobody knows when ${titled(reason.step)} is dry: only after a touch test`
     case 'no promise': return reason.reason ? `${predictionReason(reason.reason)}: only after a touch test` : 'only after a touch test'
-    case 'drying': return `waits until ${lowerFirst(reason.step)} is ${milestoneText(reason.milestone)}`
-    case 'window to come': return `the window after ${lowerFirst(reason.step)} is not open yet`
-    case 'window shut': return `the window after ${lowerFirst(reason.step)} has shut`
+    case 'drying': return `waits until ${titled(reason.step)} is ${milestoneText(reason.milestone)}`
+    case 'window to come': return `the window after ${titled(reason.step)} is not open yet`
+    case 'window shut': return `the window after ${titled(reason.step)} has shut`
     case 'keep out': return `keep out of ${reason.room}`
     case 'role': return `${kinds[reason.kind]}: for those the owner allows`
   }
@@ -98,6 +117,9 @@ const states: Record<StepState, string> = {
   'waits for': 'waits', 'may begin': 'may begin', 'being done': 'being done', 'drying': 'drying', 'clamped': 'clamped', 'pressed': 'pressed',
   'weighted': 'under weight', 'done': 'done', 'late': 'late', 'set aside': 'set aside', 'left out': 'left out', 'doubtful': 'doubtful',
 }
+
+/** Why a step is late while its window is still open: "late: the window shuts at 15:05". */
+export const lateWhy = (shutsAt: number, clock: Clock) => `${late}the window shuts at ${roughTime(shutsAt, clock, 'down')}`
 
 /** Where a step stands in its life. `because` fills in what it waits for or why it was set aside: "waits until gesso is dry to sand lightly". */
 export function stepStateText(state: StepState, because: BeginReason | null = null, asideReason: string | null = null): string {

@@ -1,7 +1,7 @@
 import type { PhotoMoment } from '#shared/terms'
 import { clockTime } from '#shared/time'
 import type { Clock } from '#shared/time'
-import { lowerFirst } from '#shared/words/steps'
+import { titled } from '#shared/words/steps'
 
 /** Why a photograph is not taken in. */
 export const photoRefusals = {
@@ -44,9 +44,9 @@ export const photoWords = {
 const moments: Record<PhotoMoment, string> = { before: photoWords.before, after: photoWords.after }
 export const momentWord = (moment: PhotoMoment) => moments[moment]
 
-/** What a picture shows, for those who do not see it: "Box 3 after first varnish: the run at the corner". */
+/** What a picture shows, for those who do not see it: "Box 3 after “First varnish”: the run at the corner". */
 export function photoAlt({ step, moment, caption }: { step: string | null, moment: PhotoMoment, caption: string }, piece: string): string {
-  const what = step === null ? piece : `${piece} ${moments[moment]} ${lowerFirst(step)}`
+  const what = step === null ? piece : `${piece} ${moments[moment]} ${titled(step)}`
   return caption === '' ? what : `${what}: ${caption}`
 }
 

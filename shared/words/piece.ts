@@ -4,7 +4,8 @@ import type { ActLine, NameLine, StepLine } from '#shared/schemas/piece-detail'
 import { clockTime, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { actRefusals } from '#shared/words/acts'
-import { actText, goneTexts, lowerFirst } from '#shared/words/steps'
+import { listText } from '#shared/words/group'
+import { actText, goneTexts, titled } from '#shared/words/steps'
 import { asSentence, predictionReason } from '#shared/words/verdict'
 import type { ProblemCode } from '#shared/work/types'
 
@@ -105,7 +106,7 @@ export function sharedReason(rungs: readonly MilestonePrediction[]): ReasonCode 
   return most && count(most.reason) > 1 ? most.reason : null
 }
 
-/** "Below the material's minimum temperature." */
+/** "Below the material’s minimum temperature." */
 export const reasonSentence = (reason: ReasonCode) => asSentence(predictionReason(reason))
 
 /** "window open till 15:05", "window opens 13:40, shuts 15:05", "window shut at 12:10". */
@@ -179,11 +180,8 @@ export const problemText = (why: ProblemCode) => `It cannot be so any more, and 
 /** How many acts stand against what was corrected. */
 export const problemsText = (count: number) => (count === 1 ? 'One act below cannot be so since a correction.' : `${count} acts below cannot be so since a correction.`)
 
-/** "a", "a and b", "a, b and c", for names in the middle of a line. */
-const listed = (names: readonly string[]) => (names.length < 2 ? names.map(lowerFirst).join('') : `${names.slice(0, -1).map(lowerFirst).join(', ')} and ${lowerFirst(names.at(-1) ?? '')}`)
-
-/** "waits for gesso and the frame glue-up". */
-export const waitsForText = (names: readonly string[]) => (names.length === 0 ? 'waits' : `waits for ${listed(names)}`)
+/** "waits for “Gesso” and “Glue the frame”". */
+export const waitsForText = (names: readonly string[]) => (names.length === 0 ? 'waits' : `waits for ${listText(names.map(titled))}`)
 
 /** Why a step that no schedule asked for is there. */
 export function originText({ origin, because }: Pick<StepLine, 'origin' | 'because'>, clock: Clock): string | null {
@@ -203,8 +201,8 @@ export const plannedText = (at: number, clock: Clock) => (at < clock.now ? `was 
 /** "done Tue 9:00". */
 export const doneText = (at: number | null, clock: Clock) => (at === null ? 'done' : `done ${clockTime(at, clock)}`)
 
-/** "On its own way since Tue 9:00, from the second varnish on." */
+/** "On its own way since Tue 9:00, from “Second varnish” on." */
 export function branchText({ fromStep, sinceAt, rejoined }: { fromStep: string, sinceAt: number, rejoined: boolean }, clock: Clock): string {
-  const from = fromStep === '' ? '' : `, from ${lowerFirst(fromStep)} on`
+  const from = fromStep === '' ? '' : `, from ${titled(fromStep)} on`
   return rejoined ? `It went its own way ${clockTime(sinceAt, clock)}${from}, and is back with the others.` : `On its own way since ${clockTime(sinceAt, clock)}${from}.`
 }

@@ -1,8 +1,6 @@
 import type { PieceSort } from '#shared/piece-finder'
 import type { PlaceState } from '#shared/schemas/piece-state'
 import type { GoneWay } from '#shared/terms'
-import { clockTime } from '#shared/time'
-import type { Clock } from '#shared/time'
 import { goneTexts } from '#shared/words/steps'
 
 /** The words of the list of pieces. */
@@ -106,12 +104,6 @@ export function countText(shown: number, all: number): string {
 export function freeText({ capacity, taken }: Pick<PlaceState, 'capacity' | 'taken'>): string {
   const free = capacity - taken
   return free <= 0 ? 'full' : `${free} of ${capacity} free`
-}
-
-/** "Sold Tue 9:00", as a line about a piece that has left. */
-export function goneLine({ goneAt, how }: { goneAt: number, how: GoneWay | null }, clock: Clock): string {
-  const said = how === null ? 'gone out' : goneTexts[how]
-  return `${said.charAt(0).toUpperCase()}${said.slice(1)} ${clockTime(goneAt, clock)}`
 }
 
 /** "Boxes, for the fair": what a piece belongs to. */

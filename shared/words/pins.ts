@@ -1,23 +1,21 @@
 import { clockTime, roughTime } from '#shared/time'
 import type { Clock } from '#shared/time'
-import { lowerFirst } from '#shared/words/steps'
-
-const sentence = (step: string) => `“${step}”`
+import { titled } from '#shared/words/steps'
 
 /** Why a time cannot be given to a piece of work. Each names what clashes. */
 export const pinWords = {
   past: (nextAt: number, clock: Clock) => `That time has gone by. The next that can be given is ${clockTime(nextAt, clock)}.`,
   begun: 'It has been begun: work in hand stays where it is.',
   notPlanned: 'It has no time in the plan, so there is nothing to pin.',
-  notAble: (name: string, step: string) => `${name} does not do ${sentence(step)}.`,
-  hours: (name: string | null, step: string) => name === null ? `Nobody who may do ${sentence(step)} works for so long then.` : `${name} does not work for so long then.`,
-  filmFirst: (step: string, readyAt: number, clock: Clock) => `${sentence(step)} cannot begin before ${roughTime(readyAt, clock, 'up')}: what is beneath is not dry enough sooner.`,
-  stepFirst: (step: string, before: string, readyAt: number, clock: Clock) => `${sentence(step)} cannot begin before ${roughTime(readyAt, clock, 'up')}: ${lowerFirst(before)} comes first.`,
+  notAble: (name: string, step: string) => `${name} does not do ${titled(step)}.`,
+  hours: (name: string | null, step: string) => name === null ? `Nobody who may do ${titled(step)} works for so long then.` : `${name} does not work for so long then.`,
+  filmFirst: (step: string, readyAt: number, clock: Clock) => `${titled(step)} cannot begin before ${roughTime(readyAt, clock, 'up')}: what is beneath is not dry enough sooner.`,
+  stepFirst: (step: string, before: string, readyAt: number, clock: Clock) => `${titled(step)} cannot begin before ${roughTime(readyAt, clock, 'up')}: ${titled(before)} comes first.`,
   shutRoom: (room: string) => `${room} stands shut until a person opens it, so nobody is planned into it.`,
-  windowShut: (step: string, shutsAt: number, clock: Clock) => `The window for ${sentence(step)} shuts ${clockTime(shutsAt, clock)}. Later it wants its recovery.`,
-  windowBetween: (step: string, opensAt: number, clock: Clock) => `The window for ${sentence(step)} is shut then and opens again ${clockTime(opensAt, clock)}.`,
-  taken: (name: string, other: string) => `${name} has ${lowerFirst(other)} then, which stays where it is.`,
-  followed: (step: string, other: string) => `${sentence(step)} would be too late for ${lowerFirst(other)}, which is pinned after it.`,
-  apart: (step: string, other: string) => `${sentence(step)} and ${lowerFirst(other)} do not go together in one room, and the other stays where it is.`,
+  windowShut: (step: string, shutsAt: number, clock: Clock) => `The window for ${titled(step)} shuts ${clockTime(shutsAt, clock)}. Later it wants its recovery.`,
+  windowBetween: (step: string, opensAt: number, clock: Clock) => `The window for ${titled(step)} is shut then and opens again ${clockTime(opensAt, clock)}.`,
+  taken: (name: string, other: string) => `${name} has ${titled(other)} then, which stays where it is.`,
+  followed: (step: string, other: string) => `${titled(step)} would be too late for ${titled(other)}, which is pinned after it.`,
+  apart: (step: string, other: string) => `${titled(step)} and ${titled(other)} do not go together in one room, and the other stays where it is.`,
   noPlanWithIt: 'With that, the rest finds no plan.',
 } as const

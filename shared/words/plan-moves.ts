@@ -5,7 +5,7 @@ import type { Clock } from '#shared/time'
 import { temperatureText } from '#shared/units'
 import type { Units } from '#shared/units'
 import { groupNames } from '#shared/words/group'
-import { lowerFirst, stepNoun } from '#shared/words/steps'
+import { stepNoun, titled } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 
 export const moveWords = {
@@ -19,15 +19,18 @@ const places: Record<PlaceKind, string> = {
   'press': 'the press is in use', 'bench': 'the benches are full', 'booth': 'the booth is in use', 'drying cabinet': 'the drying cabinet is full', 'floor': 'the floor is full',
 }
 
-/** Under a swatch, for a while: where its next turn was planned before. */
-export const wasText = ({ wasAt }: Pick<MovedTurn, 'wasAt'>, clock: Clock) => `moved, was ${clockTime(wasAt, clock)}`
+/** Under a swatch, for a while: from when to when its next turn has moved. */
+export const wasText = ({ wasAt, isAt }: Pick<MovedTurn, 'wasAt' | 'isAt'>, clock: Clock) => `moved from ${clockTime(wasAt, clock)} to ${clockTime(isAt, clock)}`
+
+/** Beside a planned start: from when it has moved, and why. */
+export const movedWhy = ({ wasAt, why }: Pick<MovedTurn, 'wasAt' | 'why'>, clock: Clock, units: Units) => asSentence(`moved from ${clockTime(wasAt, clock)}: ${causeText(why, clock, units)}`)
 
 /** The time of a start that has been moved, told in full: "15:40", "Wed 9:00". */
 const at = (instant: number, clock: Clock) => clockTime(instant, clock)
 
 function filmText({ step, readyAt, room, tempC }: Extract<MoveCause, { code: 'film later' | 'film sooner' }>, clock: Clock, units: Units): string {
   const air = room !== null && tempC !== null ? `${room} falls to ${temperatureText(tempC, units)}, and ` : ''
-  return `${air}${lowerFirst(step)} is not dry enough before ${roughTime(readyAt, clock, 'up')}`
+  return `${air}${titled(step)} is not dry enough before ${roughTime(readyAt, clock, 'up')}`
 }
 
 /** Why a turn lies elsewhere, to stand behind a colon. */
@@ -35,24 +38,24 @@ export function causeText(why: MoveCause, clock: Clock, units: Units): string {
   switch (why.code) {
     case 'pinned': return why.by === null ? 'it was pinned there' : `${why.by} pinned it there`
     case 'window missed': return 'it misses its window, and its recovery comes first'
-    case 'recovery': return `a window was missed, and ${lowerFirst(why.step)} comes first`
+    case 'recovery': return `a window was missed, and ${titled(why.step)} comes first`
     case 'shut room': return `${why.room} stands shut until somebody opens it`
     case 'film later': return filmText(why, clock, units)
-    case 'film sooner': return `${lowerFirst(why.step)} lets it begin sooner, from ${roughTime(why.readyAt, clock, 'up')}`
-    case 'not told': return `nobody has said whether ${lowerFirst(why.step)} was done, due ${at(why.dueAt, clock)}`
-    case 'follows': return `it follows ${lowerFirst(why.step)}, now at ${at(why.startsAt, clock)}${why.because === null ? '' : `; ${causeText(why.because, clock, units)}`}`
-    case 'step added': return `${lowerFirst(why.step)} was put in before it`
+    case 'film sooner': return `${titled(why.step)} lets it begin sooner, from ${roughTime(why.readyAt, clock, 'up')}`
+    case 'not told': return `nobody has said whether ${titled(why.step)} was done, due ${at(why.dueAt, clock)}`
+    case 'follows': return `it follows ${titled(why.step)}, now at ${at(why.startsAt, clock)}${why.because === null ? '' : `; ${causeText(why.because, clock, units)}`}`
+    case 'step added': return `${titled(why.step)} was put in before it`
     case 'hours': return why.name === null ? 'nobody who may do it works then' : `${why.name} does not work then`
-    case 'hands': return `${why.name ?? 'everybody who may do it'} is at ${lowerFirst(why.step)} of ${why.added ? 'the new batch ' : ''}${why.batch} then${why.name === null ? ' or at other work' : ''}`
-    case 'freed': return `${why.name ?? 'somebody'} is free then, since ${lowerFirst(why.step)} of ${why.batch} lies elsewhere now`
+    case 'hands': return `${why.name ?? 'everybody who may do it'} is at ${titled(why.step)} of ${why.added ? 'the new batch ' : ''}${why.batch} then${why.name === null ? ' or at other work' : ''}`
+    case 'freed': return `${why.name ?? 'somebody'} is free then, since ${titled(why.step)} of ${why.batch} lies elsewhere now`
     case 'place': return `${places[why.kind]} then`
-    case 'dust': return why.step === null ? 'a film in the room is not free of dust before' : `dust and wet film do not go together: ${lowerFirst(why.step)} is then`
-    case 'vapour': return `vapour keeps it apart from ${lowerFirst(why.step)}`
+    case 'dust': return why.step === null ? 'a film in the room is not free of dust before' : `dust and wet film do not go together: ${titled(why.step)} is then`
+    case 'vapour': return `vapour keeps it apart from ${titled(why.step)}`
     case 'fits better': return 'it fits better now'
   }
 }
 
-/** "Third coat of Lantern box 2 moves from 15:40 to Wed 9:00: the Shed falls to 8 °C, and second coat is not dry enough before Wed 8:45." */
+/** "“Third coat” of Lantern box 2 moves from 15:40 to Wed 9:00: the Shed falls to 8 °C, and “Second coat” is not dry enough before Wed 8:45." */
 export function moveText(moves: readonly MovedTurn[], clock: Clock, units: Units): string {
   const [first] = moves
   if (!first) return ''

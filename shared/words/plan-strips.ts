@@ -3,7 +3,7 @@ import type { PlanBlock, PlanDay, PlanStrip } from '#shared/schemas/plan'
 import { clockFace, clockTime, localDate, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { groupNames } from '#shared/words/group'
-import { stepNoun } from '#shared/words/steps'
+import { stepLabel } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 import { weekdayText } from '#shared/words/week'
 
@@ -47,7 +47,7 @@ export const pinDialog = {
 } as const
 
 /** "Light sanding, Boxes 1–4". */
-export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${asSentence(kind === 'work' ? stepNoun(stepKind, step) : step).slice(0, -1)}, ${groupNames(pieces)}`
+export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${asSentence(kind === 'work' ? stepLabel(stepKind, step) : step).slice(0, -1)}, ${groupNames(pieces)}`
 
 /** "9:15 to 10:40", with the day when it is another. */
 export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${clockFace(clock.zone.wall(toAt).minutes)}`

@@ -1,6 +1,6 @@
 import type { CoatSize, Hold } from '#shared/terms'
 import { groupNames } from '#shared/words/group'
-import { lowerFirst } from '#shared/words/steps'
+import { lowerFirst, titled } from '#shared/words/steps'
 import type { PutOnPart } from '#shared/put-on'
 
 export const putOnWords = {
@@ -29,10 +29,10 @@ export const putOnWords = {
 export const sizeWords: Record<CoatSize, string> = { thin: 'Thin', normal: 'Normal', full: 'Full', flood: 'Flood' }
 export const holdWords: Record<Hold, string> = { clamps: 'Clamps', press: 'Press', weight: 'Weight' }
 
-/** "Put on: shellac on 3 pieces", the main key; without pieces or material it only says what it does. */
+/** "Shellac is on 3 pieces", the main key; without pieces or material it only says what it does. */
 export function putOnKey(material: string | null, count: number): string {
   if (material === null || count === 0) return 'It is on'
-  return count === 1 ? `${material} is on` : `${material} is on ${count}`
+  return count === 1 ? `${material} is on` : `${material} is on ${count} pieces`
 }
 
 /** "Ledgers 1 and 2 wait for exactly this: second varnish." */
@@ -42,8 +42,8 @@ export function waitsForThis(parts: readonly PutOnPart[]): string | null {
   return waiting.map(({ step, pieces }) => `${groupNames(pieces.map(each => each.piece.name))} ${pieces.length === 1 ? 'waits' : 'wait'} for exactly this: ${lowerFirst(step?.name ?? '')}.`).join(' ')
 }
 
-/** The key that takes the offer: "As second varnish". */
+/** The key that takes the offer: "On, as “Second varnish”". */
 export function asStep(parts: readonly PutOnPart[]): string {
   const steps = parts.flatMap(part => part.step ?? [])
-  return steps.length === 1 && parts.length === 1 ? `On, as ${lowerFirst(steps[0]?.name ?? '')}` : 'On, as each waits for it'
+  return steps.length === 1 && parts.length === 1 ? `On, as ${titled(steps[0]?.name ?? '')}` : 'On, as each waits for it'
 }

@@ -1,10 +1,10 @@
+import { temperatureText } from '#shared/units'
 import { milestoneText } from '#shared/words/steps'
 import type { RateWire } from '#shared/schemas/rate'
 
 export const fields = { coats: 'Name the coats by their numbers, such as 3,4.' } as const
 
 const percent = (share: number) => `${Math.round(share * 100)} % humidity`
-const warmth = (tempC: number, units: 'metric' | 'us') => units === 'us' ? `${Math.round(tempC * 9 / 5 + 32)} °F` : `${Math.round(tempC)} °C`
 
 /** Within a twentieth of 1 nobody notices the difference. */
 const counts = (factor: number) => Math.abs(Math.log(factor)) > Math.log(1.05)
@@ -13,13 +13,13 @@ const counts = (factor: number) => Math.abs(Math.log(factor)) > Math.log(1.05)
 export function rateText(rate: RateWire, units: 'metric' | 'us' = 'metric'): string {
   const air = rate.assumed ? ' (nobody has read the air here: the studio’s usual is taken)' : ''
   const head = `${rate.material}, towards ${milestoneText(rate.towards)}`
-  if (rate.factor <= 0.005) return `${head}: stands still at ${warmth(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
+  if (rate.factor <= 0.005) return `${head}: stands still at ${temperatureText(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
   const pulls = (part: number) => counts(part) && Math.sign(Math.log(part)) === Math.sign(Math.log(rate.factor))
   const causes = [
-    ...pulls(rate.warmth) ? [warmth(rate.tempC, units)] : [],
+    ...pulls(rate.warmth) ? [temperatureText(rate.tempC, units)] : [],
     ...pulls(rate.damp) ? [percent(rate.rh)] : [],
   ]
-  if (!counts(rate.factor) || causes.length === 0) return `${head}: as fast as its sheet says, at ${warmth(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
+  if (!counts(rate.factor) || causes.length === 0) return `${head}: as fast as its sheet says, at ${temperatureText(rate.tempC, units)}, ${percent(rate.rh)}${air}.`
   return `${head}: ${rate.factor.toFixed(2)} of sheet speed: ${causes.join(', ')}${air}.`
 }
 

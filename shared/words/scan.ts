@@ -1,6 +1,6 @@
 /** Reading a tag by the camera, or its letters by hand. */
 export const scanWords = {
-  title: 'Scan a tag by the camera',
+  title: 'Scan a tag with the camera',
   picture: 'What the camera sees',
   starting: 'The camera is starting.',
   looking: 'Hold the tag of a shelf, a carrier or a piece before the camera.',
@@ -15,7 +15,7 @@ export const scanWords = {
   typedHint: 'Five letters and figures, such as K7MP4. Small letters do.',
   read: 'Go to it',
   pick: 'Choose what stands there',
-  foreign: (text: string) => `This code is none of a studio’s tags. It says: ${text}`,
+  foreign: (text: string) => `This is not a tag of this studio. It says: ${text}`,
   otherHost: (host: string) => `This piece’s tag leads to ${host}, which is another installation.`,
   noPiece: 'This piece is not in the studio any more.',
   several: 'Several tags are in sight. Which one?',

@@ -16,8 +16,8 @@ export function changeText(change: ScheduleChange): string {
     case 'step added': return `New step: ${change.of}`
     case 'step gone': return `Step taken out: ${change.of}`
     case 'step changed': return change.fields.includes('name') ? `${change.was} is now ${change.of}${change.fields.length > 1 ? `: ${change.fields.filter(field => field !== 'name').map(field => fields[field]).join(', ')}` : ''}` : `${change.of}: ${change.fields.map(field => fields[field]).join(', ')}`
-    case 'wait added': return `${change.of} waits for ${change.after} now`
-    case 'wait gone': return `${change.of} waits for ${change.after} no more`
-    case 'wait changed': return `What ${change.of} waits for after ${change.after}`
+    case 'wait added': return `“${change.of}” waits for “${change.after}” now`
+    case 'wait gone': return `“${change.of}” waits for “${change.after}” no more`
+    case 'wait changed': return `What “${change.of}” waits for after “${change.after}”`
   }
 }

@@ -5,15 +5,16 @@ import { mayDoStep } from '#shared/permissions'
 import type { DustClass, Ground, Hold, Risk, StepKind } from '#shared/terms'
 import { span } from '#shared/time'
 import { waitSpan } from '#shared/words/schedules'
-import { lowerFirst, milestoneText } from '#shared/words/steps'
+import { lowerFirst, milestoneText, nameless, titled } from '#shared/words/steps'
 
+const sentenceOf = (words: string) => words.charAt(0).toUpperCase() + words.slice(1)
 const undoable = (what: string) => lowerFirst(what).replace(/\.$/, '')
 
 /** What the editor of a finishing schedule says. */
 export const editorWords = {
   titleNew: 'A new finishing schedule',
   titleOf: (name: string) => `Change ${name}`,
-  nameless: 'the step without a name',
+  nameless,
   waiting: 'Fetching the schedule and the materials',
   failed: 'The schedule and the materials could not be fetched.',
   notYours: 'Makers and owners change finishing schedules. You can read this one.',
@@ -63,13 +64,13 @@ export const editorWords = {
   conflictTake: 'Leave mine and take theirs',
   conflictTheirs: 'What they changed',
   conflictSame: 'Nothing that the list would show.',
-  changed: (step: string) => `${step} changed.`,
-  added: (step: string) => `${step} added.`,
-  moved: (step: string, by: -1 | 1) => `${step} moved ${by < 0 ? 'up' : 'down'}.`,
-  copied: (step: string) => `${step} copied.`,
-  removed: (step: string) => `${step} taken out.`,
-  waitChanged: (step: string) => `What ${lowerFirst(step)} waits for is changed.`,
-  waitGone: (step: string) => `${step} waits for one step less.`,
+  changed: (step: string) => sentenceOf(`${titled(step)} changed.`),
+  added: (step: string) => sentenceOf(`${titled(step)} added.`),
+  moved: (step: string, by: -1 | 1) => sentenceOf(`${titled(step)} moved ${by < 0 ? 'up' : 'down'}.`),
+  copied: (step: string) => sentenceOf(`${titled(step)} copied.`),
+  removed: (step: string) => sentenceOf(`${titled(step)} taken out.`),
+  waitChanged: (step: string) => `What ${titled(step)} waits for is changed.`,
+  waitGone: (step: string) => sentenceOf(`${titled(step)} waits for one step less.`),
   undone: (what: string) => `Undone: ${undoable(what)}.`,
   aboutChanged: 'Name and use changed.',
   partChanged: (part: string) => `${part === '' ? 'A part' : part} changed.`,
@@ -147,7 +148,7 @@ export const waitFields = {
   add: 'Add the wait',
   removeOf: (name: string) => `No more waiting for ${name}`,
   remove: 'No wait',
-  after: (name: string) => `After ${lowerFirst(name)}`,
+  after: (name: string) => `After ${titled(name)}`,
   none: 'There is no other step it could wait for.',
 } as const
 
@@ -213,10 +214,10 @@ export const reasonWords = {
   step: 'Step', wait: 'Waits', work: 'Work', whole: 'Batch', each: 'Piece',
 } as const
 
-/** Why a leg of the longest way waits: "until ground is dry to sand lightly". */
+/** Why a leg of the longest way waits: "until “Ground” is dry to sand lightly". */
 export function legText({ because }: Leg, nameOf: (key: string) => string): string {
   if (because === null) return 'begins at once'
-  const from = lowerFirst(nameOf(because.from))
+  const from = titled(nameOf(because.from))
   switch (because.code) {
     case 'milestone': return `until ${from} is ${milestoneText(because.milestone)}`
     case 'window': return `for the window after ${from}`

@@ -1,7 +1,7 @@
 import type { ScheduleLinkWire, ScheduleStepWire, WaitWire } from '#shared/schemas/schedule'
 import type { Hold, Risk, StepKind } from '#shared/terms'
 import { span } from '#shared/time'
-import { lowerFirst, milestoneText } from '#shared/words/steps'
+import { lowerFirst, milestoneText, titled } from '#shared/words/steps'
 
 /** What the pages of the finishing schedules say. */
 export const scheduleWords = {
@@ -18,7 +18,7 @@ export const scheduleWords = {
   start: 'Start a batch with it',
   elapsed: 'Elapsed',
   handsOn: 'Hands-on',
-  steps: (count: number) => `${count} steps`,
+  steps: (count: number) => (count === 1 ? '1 step' : `${count} steps`),
   edition: (no: number) => `edition ${no}`,
   way: 'How the branches meet',
   wayHint: 'One column for each part, from top to bottom. Where a step works on several parts its line reaches across them: there they meet.',
@@ -42,18 +42,18 @@ export function waitSpan(minutes: number): string {
   return minutes >= 600 ? `${Math.round(minutes / 60)} h` : span(minutes < 120 ? Math.ceil(minutes / 5) * 5 : Math.ceil(minutes / 15) * 15)
 }
 
-/** "likely 3 h, give it till 5 h"; a wait without an end says so. */
+/** "likely 3 h, up to 5 h"; a wait without an end says so. */
 export function waitText({ likelyMin, giveTillMin, promised }: WaitWire): string {
   if (likelyMin === null) return 'no end in sight in the studio’s usual air'
   if (giveTillMin === null || !promised) return `likely ${waitSpan(likelyMin)}, then only a touch test tells`
-  return `likely ${waitSpan(likelyMin)}, give it till ${waitSpan(giveTillMin)}`
+  return `likely ${waitSpan(likelyMin)}, up to ${waitSpan(giveTillMin)}`
 }
 
 const risks: Record<Risk, string> = { likely: 'goes by likely', p90: 'goes by give-it-till', p98: 'goes by the slowest' }
 
-/** What a step waits for, as one line: "Waits until ground is dry to sand lightly: likely 3 h, give it till 5 h. Goes by likely." */
+/** What a step waits for, as one line: "Until “Ground” is dry to sand lightly: likely 3 h, up to 5 h. Goes by likely." */
 export function linkText(link: ScheduleLinkWire, before: Pick<ScheduleStepWire, 'name'>): string {
-  const from = lowerFirst(before.name)
+  const from = titled(before.name)
   if (link.milestone === null || link.wait === null) return `After ${from}.`
   const risk = risks[link.risk]
   return `Until ${from} is ${milestoneText(link.milestone)}: ${waitText(link.wait)}. ${risk.charAt(0).toUpperCase()}${risk.slice(1)}.`
@@ -81,7 +81,7 @@ export function minutesText({ setupMin, pieceMin, cleanMin, releaseMin, hands }:
   ].join(', ')
 }
 
-/** What the step leaves lying: "In clamps: likely 40 min, give it till 1 h.", or null. */
+/** What the step leaves lying: "In clamps: likely 40 min, up to 1 h.", or null. */
 export function restText({ hold, held, again }: Pick<ScheduleStepWire, 'hold' | 'held' | 'again'>): string | null {
   if (hold && held) return `${holds[hold].charAt(0).toUpperCase()}${holds[hold].slice(1)}: ${waitText(held)}.`
   return again ? `Between its coats: ${waitText(again)}.` : null

@@ -1,7 +1,7 @@
 import type { PushedBatch, StartPlan } from '#shared/schemas/promise'
 import { clockTime, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
-import { lowerFirst } from '#shared/words/steps'
+import { titled } from '#shared/words/steps'
 
 /** What the comparison of starts says. */
 export const startCheckWords = {
@@ -26,7 +26,7 @@ export const chooseText = (plan: StartPlan, clock: Clock) => `${startCheckWords.
 const finishText = ({ endsAt, without }: StartPlan, clock: Clock) =>
   endsAt === null || without > 0 ? `${without === 1 ? 'One step finds' : `${without} steps find`} no time.` : `Last hand on it ${roughTime(endsAt, clock, 'up', Math.min(Math.abs(endsAt - clock.now), 6 * 86_400_000))}.`
 
-const shutText = ({ step, opensAt, shutsAt }: StartPlan['missed'][number], clock: Clock) => `The window for ${lowerFirst(step)}, ${clockTime(opensAt, clock)} to ${clockTime(shutsAt, clock)}, shuts with nobody at it.`
+const shutText = ({ step, opensAt, shutsAt }: StartPlan['missed'][number], clock: Clock) => `The window for ${titled(step)}, ${clockTime(opensAt, clock)} to ${clockTime(shutsAt, clock)}, shuts with nobody at it.`
 
 const handsText = ({ hands }: StartPlan) => hands.minutes === 0 ? [] : [`${hands.most === 1 ? 'One person' : `${hands.most} people`} at the most at once, ${hands.minutes < 600 ? span(hands.minutes) : `${Math.round(hands.minutes / 60)} h`} of hands in all.`]
 

@@ -1,7 +1,7 @@
 import type { WaitWire } from '#shared/schemas/schedule'
 import { clockTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
-import { lowerFirst } from '#shared/words/steps'
+import { titled } from '#shared/words/steps'
 
 /** The words of starting a batch. */
 export const startWords = {
@@ -57,16 +57,16 @@ export const startWords = {
   kept: 'What is typed here stays on this device until the batch has started.',
 } as const
 
-/** "likely 2 days, give it till 3 days": how long a schedule takes at best. */
+/** "likely 2 days, up to 3 days": how long a schedule takes at best. */
 export function elapsedText({ likelyMin, giveTillMin, promised }: WaitWire): string {
   if (likelyMin === null) return 'how long, nobody can say in the studio’s usual air'
-  const till = giveTillMin === null || giveTillMin === likelyMin ? '' : `, give it till ${span(giveTillMin)}`
+  const till = giveTillMin === null || giveTillMin === likelyMin ? '' : `, up to ${span(giveTillMin)}`
   return `likely ${span(likelyMin)}${till}${promised ? '' : ', part of it only by touch tests'}`
 }
 
-/** "1 h 50 min of hands for 6"; never in days, for a day of hands is not a day of the clock. */
+/** "1 h 50 min of hands for 6 pieces"; never in days, for a day of hands is not a day of the clock. */
 export function handsText(minutes: number, pieces: number): string {
-  return `${minutes < 600 ? span(minutes) : `${Math.round(minutes / 60)} h`} of hands for ${pieces}`
+  return `${minutes < 600 ? span(minutes) : `${Math.round(minutes / 60)} h`} of hands for ${pieces === 1 ? '1 piece' : `${pieces} pieces`}`
 }
 
 export const stepsText = (count: number) => (count === 1 ? '1 step' : `${count} steps`)
@@ -79,8 +79,8 @@ export const placeText = (place: string, room: string, free: number, capacity: n
 /** Said at the place before anything is sent. */
 export const fullText = (place: string, free: number, wanted: number) => `${place} has room for ${free}, and these take ${wanted}.`
 
-/** A window that falls where nobody works: "The window for second varnish, Tue 19:30 to Wed 3:00, falls outside working hours." */
-export const missedText = (step: string, opensAt: number, shutsAt: number, clock: Clock) => `The window for ${lowerFirst(step)}, ${clockTime(opensAt, clock)} to ${clockTime(shutsAt, clock)}, falls outside working hours.`
+/** A window that falls where nobody works: "The window for “Second varnish”, Tue 19:30 to Wed 3:00, falls outside working hours." */
+export const missedText = (step: string, opensAt: number, shutsAt: number, clock: Clock) => `The window for ${titled(step)}, ${clockTime(opensAt, clock)} to ${clockTime(shutsAt, clock)}, falls outside working hours.`
 
 /** On the page one comes to after the start. */
 export const startedText = (name: string, pieces: number, scheduled = true) => `${name} has started: ${pieces === 1 ? 'one piece' : `${pieces} pieces`}. ${scheduled ? 'What it needs first stands below.' : 'Tell here what is put on.'}`

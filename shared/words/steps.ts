@@ -1,4 +1,6 @@
+import { ragAnswers } from '#shared/terms'
 import { listText } from '#shared/words/group'
+import { ragAnswerTexts } from '#shared/words/rags'
 import type { ActKind, GoneWay, Hold, MilestoneName, StepKind } from '#shared/terms'
 
 /** A name in the middle of a line: "Second varnish" as "second varnish", but "PVA on the spine" as it is. */
@@ -17,9 +19,20 @@ export function stepAct(kind: StepKind, name: string): string {
 
 const nouns: Partial<Record<StepKind, string>> = { 'light sanding': 'light sanding', 'flat sanding': 'flat sanding', 'levelling': 'levelling', 'turn over': 'turning over' }
 
-/** A step as a thing to start: "light sanding", "second varnish". */
-export function stepNoun(kind: StepKind, name: string): string {
+/** A step at the head of a line or behind a colon: "light sanding", "second varnish". */
+export function stepLabel(kind: StepKind, name: string): string {
   return nouns[kind] ?? lowerFirst(name)
+}
+
+/** What stands where nobody has named a step. */
+export const nameless = 'the step without a name'
+
+/** A title inside a sentence: “Oil the neck”. Names are the studio's own and many are commands, which without quotes would run into the sentence. */
+export const titled = (name: string) => (name === '' || name === nameless ? nameless : `“${name}”`)
+
+/** A step inside a sentence, as a thing to start: "light sanding", “Second varnish”. */
+export function stepNoun(kind: StepKind, name: string): string {
+  return nouns[kind] ?? titled(name)
 }
 
 const milestones: Record<MilestoneName, string> = {
@@ -109,6 +122,11 @@ function testText({ milestone, reached }: ActDetail): string {
   return reached ? `tested: ${rung}` : `tested: not yet ${rung}`
 }
 
+function ragsText(answer: string | null | undefined): string {
+  const given = ragAnswers.find(each => each === answer)
+  return given ? `rags: ${lowerFirst(ragAnswerTexts[given])}` : 'rags answered'
+}
+
 const history: Record<ActKind, (detail: ActDetail) => string> = {
   'batch started': () => 'batch started',
   'began': ({ step }) => named('began', step),
@@ -134,7 +152,7 @@ const history: Record<ActKind, (detail: ActDetail) => string> = {
   'air': ({ air }) => air ? airs[air] : 'air noted',
   'intake answered': ({ answer }) => answer ? `intake answered: ${answer}` : 'intake answered',
   'room opened': ({ place }) => place ? `opened ${place}` : 'room opened',
-  'rags answered': ({ answer }) => answer ? `rags: ${answer}` : 'rags answered',
+  'rags answered': ({ answer }) => ragsText(answer),
   'gone': ({ gone }) => gone ? goneTexts[gone] : 'gone out',
   'back': ({ place }) => place ? `back in the studio: ${place}` : 'back in the studio',
   'regrouped': ({ batch }) => batch ? `put with the batch ${batch}` : 'put with another batch',

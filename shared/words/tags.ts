@@ -81,7 +81,7 @@ export const printWords = {
   failed: 'The tags could not be fetched.',
   noCode: (count: number) => count === 1 ? 'One tag has no code yet. A maker or an owner opens this page and it gets one.' : `${count} tags have no code yet. A maker or an owner opens this page and they get one.`,
   scale: (count: number, sheets: number, edge: string, module: string) => `${count === 1 ? '1 tag' : `${count} tags`} on ${sheets === 1 ? '1 sheet' : `${sheets} sheets`}. Print at 100 %, not fitted to the page. A tag is 62 by 42 mm; its code ${edge} mm with its rim, one square of it ${module} mm.`,
-  loopback: (address: string) => `The codes lead to ${address}, which only this computer can open. Open this page by the address that phones use, or set STILLWET_PUBLIC_URL.`,
+  loopback: (address: string, owner: boolean) => `The codes lead to ${address}, which only this computer can open. Open this page by the address that phones use, or ${owner ? 'give the server that address as STILLWET_PUBLIC_URL' : 'ask an owner which one that is'}.`,
   asOf: (day: string) => `As of ${day}`,
   carrierOf: (studio: string) => `Carrier, ${studio}`,
   pieceTags: 'Tags of the pieces',

@@ -1,6 +1,6 @@
 import { cautionParts } from '#shared/library/caution-parts'
 import { clockTime, localDate, localMinutes, addDays, roughTime } from '#shared/time'
-import { lowerFirst } from '#shared/words/steps'
+import { lowerFirst, titled } from '#shared/words/steps'
 import type { Clock } from '#shared/time'
 import type { ReasonCode } from '#shared/drying/types'
 import type { DoubtCause, Hold } from '#shared/terms'
@@ -20,7 +20,7 @@ export function verdictTitle(kind: VerdictKind, grip: string | null): string {
 }
 
 const predictionReasons: Record<ReasonCode, string> = {
-  'below-minimum': 'below the material\'s minimum temperature',
+  'below-minimum': 'below the material’s minimum temperature',
   'too-damp': 'too damp to promise',
   'never': 'no end in sight in this air',
   'outside-sheet': 'slower than its sheet allows: something is wrong with this coat',
@@ -82,7 +82,7 @@ export function verdictReason(reason: VerdictReason, clock: Clock): string {
     case 'doubt': return `${doubtText(reason.cause, reason.fromAt, clock)}: test first`
     case 'wet': return reason.until === null && reason.reason ? `wet, ${predictionReason(reason.reason)}` : 'wet'
     case 'no promise': return predictionReason(reason.reason)
-    case 'coat due': return `${lowerFirst(reason.what) || 'a coat'} was due ${clockTime(reason.at, clock)}`
+    case 'coat due': return `${reason.what === '' ? 'a coat' : titled(reason.what)} was due ${clockTime(reason.at, clock)}`
     case 'not there': return notThereText(reason.where, reason.seenAt, clock)
     case 'intake': return `${intakeHazards[reason.question]}: ${cautionParts.untested}`
     case 'grip wet': return `wet away from ${gripText(reason.grip)}`

@@ -66,7 +66,7 @@ describe('one sentence', () => {
     await say('acrylic gesso on ledgers one to three, twenty minutes ago, thickly')
     const card = page.getByRole('group', { name: 'Is this meant?' })
     await card.getByText('Not understood: “thickly”.').waitFor()
-    expect(await card.textContent()).toMatch(/Ledgers 1–3/)
+    expect(await card.textContent()).toMatch(/Ledgers 1–\u20603/)
     expect(rows('select id from coat')).toEqual([])
     expect(await axeProblems(page)).toEqual([])
     await card.getByRole('button', { name: 'Yes, note it' }).click()

@@ -69,7 +69,7 @@ describe('a new material from its data sheet', () => {
     await page.getByRole('heading', { level: 1, name: 'Hall varnish' }).waitFor()
     // Three minutes at a slow 2 keys a second are 360 keys.
     expect(counted.keys).toBeLessThan(360)
-    await page.getByText('data sheet of Hall varnish, “2-4 h” (read)').first().waitFor()
+    await page.getByText('data sheet of Hall varnish, “2-4 h”').first().waitFor()
     await page.getByText('not on the sheet: usual for varnish, with a wider band (a planning value of ours)').first().waitFor()
     expect(await axeProblems(page)).toEqual([])
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390)

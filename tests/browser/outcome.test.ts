@@ -72,7 +72,7 @@ describe('a day in the studio', () => {
     await page.getByText('Tide boxes has started: 3 pieces.').waitFor()
     await page.getByRole('button', { name: 'Go to its first step' }).click()
 
-    const job = page.getByRole('article').filter({ has: page.getByRole('heading', { name: 'First paint on the lid top Tide boxes 1–3' }) })
+    const job = page.getByRole('article').filter({ has: page.getByRole('heading', { name: 'First paint on the lid top Tide boxes 1–\u20603' }) })
     if (await job.getByRole('button', { name: 'Coat is on' }).count() === 0) await job.getByRole('heading').getByRole('button').click()
     await job.getByLabel('20 min ago').click()
     await job.getByRole('button', { name: 'Coat is on' }).click()
@@ -82,7 +82,7 @@ describe('a day in the studio', () => {
     await visit(page, '/air')
     await page.getByLabel('wet', { exact: true }).click()
     await page.getByRole('button', { name: 'Note it' }).click()
-    const moved = page.getByRole('status').getByText(/^Tide boxes 1–3, first paint on the lid top\./)
+    const moved = page.getByRole('status').getByText(/^Tide boxes 1–\u20603, first paint on the lid top\./)
     await moved.waitFor()
     const why = await moved.textContent() ?? ''
     expect(why).toMatch(/likely .+, give it till .+ It was likely .+, give it till /)

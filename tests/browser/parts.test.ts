@@ -59,7 +59,7 @@ describe('a box and its lid', () => {
     await key(page, 'On lid: change').waitFor()
     await key(page, 'Outside').waitFor()
     expect(await axeProblems(page)).toEqual([])
-    await key(page, 'Acrylic gesso is on 2').click()
+    await key(page, 'Acrylic gesso is on 2 pieces').click()
     await page.getByText(/coat on: acrylic gesso.*Boxes 1 and 2: lid/i).waitFor()
     expect(coated()).toEqual(['Box 1, Lid, Outside', 'Box 1, Lid, Inside', 'Box 2, Lid, Outside', 'Box 2, Lid, Inside'])
 
@@ -105,7 +105,7 @@ describe('the form for parts', () => {
     await page.getByRole('radio', { name: 'Dresser', exact: true }).check()
     await page.getByLabel('Name of part 2').fill('Deep drawer')
     // Carcase, three drawers, two doors and a top; one drawer more.
-    await page.getByText(/^7 parts: Carcase, Deep drawers 1–3/).waitFor()
+    await page.getByText(/^7 parts: Carcase, Deep drawers 1–\u20603/).waitFor()
     await key(page, 'How many of deep drawer: more').click()
     await page.getByText(/^8 parts: /).waitFor()
     await page.getByRole('radio', { name: 'Box and lid' }).check()

@@ -78,7 +78,7 @@ describe('many pieces under a thumb', () => {
     await tap(acts(page).getByRole('button', { name: 'Move' }))
     await tap(dialog(page).getByRole('button', { name: /Shelf B/ }))
     expect(taps()).toBe(3)
-    await told(page).getByText(/^Moved to Shelf B\. Tide boxes 1–6, /).waitFor()
+    await told(page).getByText(/^Moved to Shelf B\. Tide boxes 1–\u20606, /).waitFor()
     expect((await placesOf('Tide box')).size).toBe(1)
     expect(await placesOf('Tide box')).not.toEqual(before)
     await tap(told(page).getByRole('button', { name: 'Undo' }))

@@ -61,7 +61,7 @@ const tracks = (page: Page) => page.evaluate(() => (window as unknown as { keptS
 /** In place of the browser’s own detector, one that sees these texts at once. */
 const seeing = (texts: string[]) => `window.BarcodeDetector = class { static getSupportedFormats = async () => ['qr_code']; detect = async () => ${JSON.stringify(texts.map(rawValue => ({ rawValue })))} }`
 const key = (page: Page, name: string | RegExp) => page.getByRole('button', { name, exact: typeof name === 'string' })
-const sheet = (page: Page) => page.getByRole('dialog', { name: 'Scan a tag by the camera' })
+const sheet = (page: Page) => page.getByRole('dialog', { name: 'Scan a tag with the camera' })
 
 async function open(browser: Browser, path: string, options: BrowserContextOptions = { permissions: ['camera'] }, before: string | (() => void) = keepStreams) {
   const { page, problems } = await openPage(browser, server.origin, options, maker)
@@ -99,7 +99,7 @@ describe('a tag before the camera', () => {
   it('of another house is told apart, and closing the sheet lets the camera go', async () => {
     const { page, problems } = await open(foreign, '/board')
     await key(page, 'Scan a tag').click()
-    await sheet(page).getByText('This code is none of a studio’s tags. It says: https://elsewhere.test/menu').waitFor()
+    await sheet(page).getByText('This is not a tag of this studio. It says: https://elsewhere.test/menu').waitFor()
     expect(await axeProblems(page)).toEqual([])
     expect(await tracks(page)).toEqual(['live'])
     await page.keyboard.press('Escape')

@@ -70,7 +70,7 @@ describe('a schedule made by keyboard only', () => {
     await page.keyboard.press('ArrowRight')
     await press(page, dialog(page).getByRole('button', { name: 'Put it in' }).last())
     await dialog(page).waitFor({ state: 'hidden' })
-    await expect.poll(() => steps(page).last().innerText()).toContain('Until acrylic gesso is dry to sand lightly')
+    await expect.poll(() => steps(page).last().innerText()).toContain('Until “Acrylic gesso” is dry to sand lightly')
     const before = await elapsed(page).innerText()
 
     // A round of two coats a day: the steady line answers while it is typed.
@@ -95,7 +95,7 @@ describe('a schedule made by keyboard only', () => {
 
     // A press on the times gives their reasons.
     await press(page, page.getByRole('button', { name: /^Elapsed/ }))
-    await page.getByRole('dialog').getByText('until acrylic gesso is dry to sand lightly').waitFor()
+    await page.getByRole('dialog').getByText('until “Acrylic gesso” is dry to sand lightly').waitFor()
     expect(await axeProblems(page)).toEqual([])
     await page.keyboard.press('Escape')
 
@@ -129,7 +129,7 @@ describe('a schedule made by touch on a phone', () => {
     await tap(dialog(page).getByRole('radio', { name: 'Acrylic gesso', exact: true }))
     await tap(dialog(page).getByRole('button', { name: 'Put it in' }).last())
     expect(taps).toBe(3)
-    await expect.poll(() => steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso'), expect.stringContaining('Until acrylic gesso is ready to recoat')])
+    await expect.poll(() => steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso'), expect.stringContaining('Until “Acrylic gesso” is ready to recoat')])
 
     // A reload loses nothing.
     await page.reload({ waitUntil: 'load' })

@@ -20,9 +20,9 @@ describe('the rows of a batch card', () => {
     expect(rows.map(row => [row.no, row.what])).toEqual([[1, 'Glue-up'], [null, 'Change the blotters'], [null, 'Take it out'], [2, 'Varnish, 1 of 2'], [null, 'Varnish, 2 of 2']])
     expect(rows[0]?.waits).toEqual(['Begins at once.'])
     expect(rows[1]?.waits).toEqual(['After 30 min: change the blotters, 3 min.'])
-    expect(rows[2]?.waits).toEqual(['In clamps: likely 40 min, give it till 1 h.'])
-    expect(rows[3]?.waits).toEqual(['Until glue-up is dry to sand lightly: likely 3 h, give it till 5 h. Goes by give-it-till.', '2 times.'])
-    expect(rows[4]?.waits).toEqual(['Between its coats: likely 2 h, give it till 3 h.'])
+    expect(rows[2]?.waits).toEqual(['In clamps: likely 40 min, up to 1 h.'])
+    expect(rows[3]?.waits).toEqual(['Until “Glue-up” is dry to sand lightly: likely 3 h, up to 5 h. Goes by give-it-till.', '2 times.'])
+    expect(rows[4]?.waits).toEqual(['Between its coats: likely 2 h, up to 3 h.'])
   })
 
   it('say the cautions at each coat, deferring to the data sheet, and none where there are none', () => {

@@ -7,7 +7,7 @@ const said = (pieces: StandingPiece[], columns: number) => swatchRuns(pieces, co
 
 describe('runs of swatches', () => {
   it('says the same words of neighbours once', () => {
-    expect(said([swatch(1), swatch(2), swatch(3), swatch(4, { verdict: 'hands off' })], 6)).toEqual([[3, 'Ledgers 1–3, cover'], [1, null]])
+    expect(said([swatch(1), swatch(2), swatch(3), swatch(4, { verdict: 'hands off' })], 6)).toEqual([[3, 'Ledgers 1–\u20603, cover'], [1, null]])
   })
   it('begins again with a new row, another batch, another moment, other parts', () => {
     expect(said([swatch(1), swatch(2), swatch(3)], 2)).toEqual([[2, 'Ledgers 1 and 2, cover'], [1, null]])

@@ -63,7 +63,7 @@ describe('the drawing of the studio', () => {
     const state = studioWith(ledgers(13).map(piece => piece.id === 7 ? { ...piece, groups: [groupState(7, 1, [filmState()])] } : piece))
     const read = readAll(state, noon)
     const folded = drawBoard(state, read, clock).rooms[0]?.places[0]
-    expect(folded?.cells.map(({ name, count }) => [name, count])).toEqual([['Ledgers 1–6', 6], ['Ledger 7', 1], ['Ledgers 8–13', 6]])
+    expect(folded?.cells.map(({ name, count }) => [name, count])).toEqual([['Ledgers 1–\u20606', 6], ['Ledger 7', 1], ['Ledgers 8–\u206013', 6]])
     const open = drawBoard(state, read, clock, new Set([1])).rooms[0]?.places[0]
     expect([open?.cells.length, open?.unfolded, folded?.unfolded]).toEqual([13, true, false])
   })

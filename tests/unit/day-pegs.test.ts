@@ -21,7 +21,7 @@ describe('the day ruler', () => {
     const state = studioWith([withTurn(1), withTurn(2), withTurn(3)], { sessions: [session(1, at(15), [1, 2]), session(2, at(16), [3])] })
     const { pegs, note } = dayPlan(state, readAll(state, noon), clock)
     // Set-up and clean-up 10 min once in the peg of three at 10 min each: 40 min. In the plan twice: 30 + 20 = 50 min.
-    expect(pegs.map(({ title, says }) => [title, says])).toEqual([['Light sanding, Ledgers 1–3', '15:00, 40 min'], ['Before you leave', 'lids, heater, glue pot?']])
+    expect(pegs.map(({ title, says }) => [title, says])).toEqual([['Light sanding, Ledgers 1–\u20603', '15:00, 40 min'], ['Before you leave', 'lids, heater, glue pot?']])
     expect(note).toBe('until 17:30; 50 min of work')
   })
   it('sets what a window presses apart, urgent within the hour', () => {

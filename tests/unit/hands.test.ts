@@ -48,7 +48,7 @@ describe('the list of the hands', () => {
   it('puts like work of one batch into one job', () => {
     const [job, ...rest] = jobs([1, 2, 3].map(id => piece(id, [turn(id, now - hour)])))
     expect(rest).toEqual([])
-    expect(job && [job.section, job.may, jobTitle(job), jobNames(job)]).toEqual(['now', true, 'Second varnish', 'Tide boxes 1–3'])
+    expect(job && [job.section, job.may, jobTitle(job), jobNames(job)]).toEqual(['now', true, 'Second varnish', 'Tide boxes 1–\u20603'])
   })
 
   it('keeps batches apart unless the plan does them in one session', () => {
@@ -94,21 +94,36 @@ describe('the list of the hands', () => {
     const session = (id: number, size: number, by: number) => planAt(now + 15 * minute, { sessionId: id, sessionSize: size, lastStartAt: now + by * minute })
     const found = jobs([piece(1, [turn(1, now - hour, { plan: session(1, 2, 20) })]), piece(2, [turn(2, now - hour, { plan: session(1, 2, 20) })]), piece(3, [turn(3, now - hour, { plan: session(2, 1, 45) })])])
     expect(found.map(job => [jobNames(job), jobMoment(job, null, clock)])).toEqual([
-      ['Tide boxes 1 and 2', 'Start second varnish by 10:20 to do both.'],
-      ['Tide box 3', 'Start second varnish by 10:45.'],
+      ['Tide boxes 1 and 2', 'Start by 10:20 to do both.'],
+      ['Tide box 3', 'Start by 10:45.'],
     ])
+  })
+
+  it('speaks for the first of several plans, and for the window that shuts first, each with how many it is of', () => {
+    // All may begin since an hour. Two are planned at 10:45, the third tomorrow; its window shuts at 10:50, and nothing counts back from it.
+    const shutting = turn(3, now - hour, { plan: planAt(now + 24 * hour, { sessionId: 2 }) })
+    shutting.waits[0]!.windowed = true
+    shutting.waits[0]!.films[0]!.windows = [{ opensAt: now - hour, shutsAt: now + 50 * minute, fromStart: false }]
+    const [job, ...rest] = jobs([1, 2].map(id => piece(id, [turn(id, now - hour, { plan: planAt(now + 45 * minute) })])).concat(piece(3, [shutting])))
+    expect(rest).toEqual([])
+    expect(job && [job.pressing, job.at, jobMoment(job, null, clock)]).toEqual([true, now + 45 * minute, 'May begin; planned for 10:45, 2 of 3 then; the window of 1 of 3 shuts at 10:50.'])
+  })
+
+  it('does not say its own name again while it waits', () => {
+    const [job] = jobs([piece(1, [turn(1, now + hour)])])
+    expect(job && jobMoment(job, null, clock)).toBe('From 11:30; waits until “First varnish” is ready to recoat.')
   })
 
   it('says how many of a session are of this job when it is for more', () => {
     const plan = planAt(now + 15 * minute, { sessionSize: 3, lastStartAt: now + 20 * minute })
     const found = jobs([piece(1, [turn(1, now - hour, { plan })]), piece(2, [turn(2, now - hour, { plan }, { key: 'varnish-1' })])])
-    expect(found.map(job => jobMoment(job, null, clock))).toEqual(['Start second varnish by 10:20 to do all 3, 1 of them here.', 'Start second varnish by 10:20 to do all 3, 1 of them here.'])
+    expect(found.map(job => jobMoment(job, null, clock))).toEqual(['Start by 10:20 to do all 3, 1 of them here.', 'Start by 10:20 to do all 3, 1 of them here.'])
   })
 
   it('asks about the first planned start that passed, and still says the last moment', () => {
     const plan = (due: number) => planAt(now - due * minute, { sessionSize: 2, lastStartAt: now + 20 * minute })
     const [job] = jobs([piece(1, [turn(1, now - hour, { plan: plan(10) })]), piece(2, [turn(2, now - hour, { plan: plan(30) })])])
-    expect(job && jobMoment(job, null, clock)).toBe('Due since 9:30: is it on? Start second varnish by 10:20 to do both.')
+    expect(job && jobMoment(job, null, clock)).toBe('Due since 9:30: is it on? Start by 10:20 to do both.')
   })
 
   it('says no last moment of work in a shut room', () => {
@@ -181,6 +196,6 @@ describe('the last moment of a job', () => {
   it('is told for all and for the first few', () => {
     const plan = planAt(now + 10 * minute, { sessionSize: 3, lastStartAt: now + 20 * minute, firstFew: 1, lastStartFewAt: now + 50 * minute })
     const [job] = jobs([1, 2, 3].map(id => piece(id, [turn(id, now - hour, { plan })])))
-    expect(job && jobMoment(job, null, clock)).toBe('Start second varnish by 10:20 to do all 3, by 10:50 for the first.')
+    expect(job && jobMoment(job, null, clock)).toBe('Start by 10:20 to do all 3, by 10:50 for the first.')
   })
 })

@@ -23,12 +23,12 @@ describe('the morning question', () => {
   it('guesses the end of what was begun by its usual minutes', () => {
     const [question] = morningQuestions([begun(lastEvening)], clock)
     expect(question).toMatchObject({ by: 'Mara', beganAt: lastEvening, guessAt: lastEvening + 50 * minute })
-    expect(question && morningText(question, 'Ledgers 1–6', clock)).toBe('Mara began second varnish, Ledgers 1–6, Mon 16:50. Finished about Mon 17:40?')
+    expect(question && morningText(question, 'Ledgers 1–\u20606', clock)).toBe('Mara began “Second varnish”, Ledgers 1–\u20606, Mon 16:50. Finished about Mon 17:40?')
   })
   it('asks whether what was planned went on, its usual minutes after its planned start', () => {
     const [question] = morningQuestions([due(lastEvening)], clock)
     expect(question).toMatchObject({ by: null, guessAt: lastEvening + 50 * minute })
-    expect(question && morningText(question, 'Ledgers 1–6', clock)).toBe('second varnish, Ledgers 1–6, was due Mon 16:50. Did it go on, about Mon 17:40?')
+    expect(question && morningText(question, 'Ledgers 1–\u20606', clock)).toBe('“Second varnish”, Ledgers 1–\u20606, was due Mon 16:50. Did it go on, about Mon 17:40?')
   })
   it('never guesses a time that is still to come', () => expect(morningQuestions([begun(Date.parse('2026-04-06T23:40:00Z')), due(Date.parse('2026-04-06T23:30:00Z'))], { ...clock, now: Date.parse('2026-04-07T00:10:00Z') }).map(each => each.guessAt)).toEqual([Date.parse('2026-04-07T00:10:00Z'), Date.parse('2026-04-07T00:10:00Z')]))
   it('is not asked about today\'s work, nor about what merely waits', () => expect(morningQuestions([begun(now - hour), due(now - hour), job({})], clock)).toEqual([]))

@@ -64,7 +64,7 @@ describe('what something went on', () => {
     expect([steps([]), steps(['Lid']), steps(['Box', 'Lid'])]).toEqual([['gesso'], [null], ['gesso']])
   })
   it('is said with its parts and faces behind the pieces', () => {
-    expect(partsOfNames('Boxes 1–3', ['Lid'], [])).toBe('Boxes 1–3: lid')
+    expect(partsOfNames('Boxes 1–\u20603', ['Lid'], [])).toBe('Boxes 1–\u20603: lid')
     expect(partsOfNames('Dresser', ['Door 1', 'Door 2'], ['Front'])).toBe('Dresser: door 1 and door 2, front')
     expect(partsOfNames('Dresser', ['A', 'B', 'C'], [])).toBe('Dresser: 3 parts')
     expect(partsOfNames('Dresser', [], [])).toBe('Dresser')

@@ -45,6 +45,10 @@ describe('the catalogue', () => {
     const sentences = catalogue.flatMap(file => spoken(file).map(text => ({ file, text })))
     expect(sentences.filter(({ text }) => /\w!(\s|$)|\p{Extended_Pictographic}/u.test(text))).toEqual([])
   })
+  it('has one kind of apostrophe, the one that print has', () => {
+    const said = [...catalogue, ...filesBelow('shared/library', /\.ts$/)].flatMap(file => spoken(file).map(text => ({ file, text: text.replaceAll('\\\'', '\'') })))
+    expect(said.filter(({ text }) => /[a-z]'[a-z]/i.test(text) && !text.includes('${'))).toEqual([])
+  })
   it('says no sentence twice', () => {
     const sentences = catalogue.flatMap(file => spoken(file).filter(text => /^[A-Z].{20,}\.$/.test(text)))
     expect(sentences.filter((text, n) => sentences.indexOf(text) !== n)).toEqual([])

@@ -63,7 +63,7 @@ describe('the materials of the library', () => {
       }
       for (const sourced of [...material.milestones, ...material.windows, ...material.figures]) {
         expect(sourceKeys).toContain(sourced.key)
-        expect(sourced.source).toMatch(/^(maker's data sheet|maker's support letter|trade article|trade page), .+, seen$|^common practice$|^from memory: check the data sheet$|^planning value$/)
+        expect(sourced.source).toMatch(/^(maker’s data sheet|maker’s support letter|trade article|trade page), .+, seen$|^common practice$|^from memory: check the data sheet$|^planning value$/)
       }
     })
 

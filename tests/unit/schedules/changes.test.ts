@@ -17,16 +17,16 @@ describe('what changed between two editions', () => {
   it('names the step and what of it', () => {
     expect(said(changeStep(before, 'a', { perDay: 2, pieceMin: 9 }, sheets))).toEqual(['Ground: how often, minutes'])
     // The sheet of the size has no "dry to sand lightly": what sanding waits for is proposed anew, and said.
-    expect(said(changeStep(before, 'a', { materialId: materialOf('acrylic-size') }, sheets))).toEqual(['Ground: material', 'What Sand waits for after Ground'])
+    expect(said(changeStep(before, 'a', { materialId: materialOf('acrylic-size') }, sheets))).toEqual(['Ground: material', 'What “Sand” waits for after “Ground”'])
     expect(said(changeStep(before, 'a', { name: 'Seal', pieceMin: 9 }, sheets))).toEqual(['Ground is now Seal: minutes'])
   })
   it('says of a step that came or went so much, and not its waits again', () => {
-    expect(said(removeStep(before, 's', sheets))).toEqual(['Step taken out: Sand', 'Varnish waits for Ground now'])
+    expect(said(removeStep(before, 's', sheets))).toEqual(['Step taken out: Sand', '“Varnish” waits for “Ground” now'])
     expect(said(copyStep(before, 'b', sheets).draft)).toEqual(['New step: Varnish, second time'])
   })
   it('names waits that were changed, and the order', () => {
-    expect(said(setLink(before, { from: 'a', to: 's', milestone: 'dry-to-sand-flat', risk: 'p90', windowed: false, recovery: null }))).toEqual(['What Sand waits for after Ground'])
-    expect(said(moveStep(before, 's', -1, sheets))).toEqual(['The order of the steps', 'Sand waits for Ground no more', 'Varnish waits for Sand no more', 'Varnish waits for Ground now', 'Ground waits for Sand now'])
+    expect(said(setLink(before, { from: 'a', to: 's', milestone: 'dry-to-sand-flat', risk: 'p90', windowed: false, recovery: null }))).toEqual(['What “Sand” waits for after “Ground”'])
+    expect(said(moveStep(before, 's', -1, sheets))).toEqual(['The order of the steps', '“Sand” waits for “Ground” no more', '“Varnish” waits for “Sand” no more', '“Varnish” waits for “Ground” now', '“Ground” waits for “Sand” now'])
   })
   it('names parts', () => {
     expect(said({ ...addPart(before, { name: 'Knob', meetsAt: null }, sheets), summary: 'x' })).toEqual(['What it is for', 'New part: Knob'])

@@ -91,7 +91,7 @@ function handsProblems({ reads, clock }: Studio): string[] {
     const moment = groupMoment(own)
     if (moment === null || step.status === 'set aside' || job.turn.status === 'doing') return []
     const text = jobText(job, clock)
-    if (moment.kind === 'start by') return text.includes(begun(momentText(moment, clock))) && own.every(each => each.at === moment.at) ? [] : [`hands, start: ${text}, not ${momentText(moment, clock)}`]
+    if (moment.kind === 'start by') return text.includes(begun(startByText(moment, clock))) && own.every(each => each.at === moment.at) ? [] : [`hands, start: ${text}, not ${startByText(moment, clock)}`]
     if (own.length < mine.length) return []
     if (moment.kind === 'may begin' && moment.open) return job.may ? [] : [`hands, open: ${text}`]
     if (moment.kind === 'check' && moment.out === null) return (job.section === 'now') === moment.due ? [] : [`hands, check: ${job.section}`]

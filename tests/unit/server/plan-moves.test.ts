@@ -54,7 +54,7 @@ describe('what moved', () => {
     // It begins no sooner than the film is ready.
     expect(why?.code === 'film later' && why.readyAt <= is && why.readyAt > was).toBe(true)
     const [told] = likeMoves(movesAt(studio, now + 20 * minute).filter(each => each.turnId === turnLid))
-    expect(moveText(told ?? [], { now: now + 20 * minute, zone }, 'metric')).toMatch(/^Turning over of Box 1 moves from .* to .*: Bench falls to 9 °C, and first paint on the lid top is not dry enough before .*\.$/)
+    expect(moveText(told ?? [], { now: now + 20 * minute, zone }, 'metric')).toMatch(/^Turning over of Box 1 moves from .* to .*: Bench falls to 9 °C, and “First paint on the lid top” is not dry enough before .*\.$/)
   })
 
   it('is told till the next working day is over, against what was first told, and goes when the turn comes back', async () => {

@@ -16,7 +16,7 @@ describe('the next moment of a piece', () => {
   })
 
   it('is the first of all that is to come', () => {
-    const every = { verdict: handled, lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }], checks: [{ stepId: 3, at: hour(12), what: 'Change the blotters', out: null }] }
+    const every = { verdict: handled, lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11), plannedAt: null }], checks: [{ stepId: 3, at: hour(12), what: 'Change the blotters', out: null }] }
     expect(nextMoment(facts(every), hour(9), null)).toMatchObject({ kind: 'may begin', stepId: 1, at: hour(11), open: false })
     expect(nextMoment(facts({ ...every, mayBegins: [] }), hour(9), null)).toMatchObject({ kind: 'check', stepId: 3, at: hour(12), due: false })
     expect(nextMoment(facts({ ...every, mayBegins: [], checks: [] }), hour(9), null)).toMatchObject({ kind: 'start by', stepId: 1, at: hour(13.8), shutsAt: hour(15) })
@@ -24,7 +24,7 @@ describe('the next moment of a piece', () => {
   })
 
   it('says the last moment to start once the step may begin, never the window\'s end', () => {
-    const moment = nextMoment(facts({ lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11) }] }), hour(12), null)
+    const moment = nextMoment(facts({ lastStarts: [all], mayBegins: [{ ...varnish, at: hour(11), plannedAt: null }] }), hour(12), null)
     expect(moment).toMatchObject({ kind: 'start by', stepId: 1, at: hour(13.8) })
   })
 
@@ -37,7 +37,7 @@ describe('the next moment of a piece', () => {
   })
 
   it('counts what is past as now, in the order named', () => {
-    const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(8) }
+    const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(8), plannedAt: null }
     const due = { stepId: 3, at: hour(7), what: 'Turn over', out: null }
     expect(nextMoment(facts({ verdict: handled, mayBegins: [sanding], checks: [due] }), hour(9), null)).toMatchObject({ kind: 'may begin', open: true })
     expect(nextMoment(facts({ verdict: handled, checks: [due] }), hour(9), null)).toMatchObject({ kind: 'check', due: true })
@@ -45,7 +45,7 @@ describe('the next moment of a piece', () => {
   })
 
   it('opens nothing by the clock of a page cut off', () => {
-    const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(9) }
+    const sanding = { stepId: 2, stepKind: 'light sanding' as const, what: 'Sanding', at: hour(9), plannedAt: null }
     expect(nextMoment(facts({ mayBegins: [sanding] }), hour(9), hour(9) - 10 * minute)).toMatchObject({ kind: 'may begin', open: false })
   })
 
@@ -58,8 +58,13 @@ describe('the next moment of a piece', () => {
 
 describe('the one moment of several pieces', () => {
   const start = (at: number) => ({ kind: 'start by' as const, stepId: 1, at, what: 'Second varnish', stepKind: 'coat' as const, shutsAt: null, pieces: null })
-  const begin = (at: number) => ({ kind: 'may begin' as const, stepId: 1, at, what: 'Sanding', stepKind: 'light sanding' as const, open: false })
+  const begin = (at: number) => ({ kind: 'may begin' as const, stepId: 1, at, what: 'Sanding', stepKind: 'light sanding' as const, open: false, plannedAt: null })
   const check = (at: number, out: 'clamps' | null) => ({ kind: 'check' as const, stepId: 1, at, what: 'Change the blotters', out, due: false })
+
+  it('is of last moments at one time the one whose window shuts first', () => {
+    const shutting = (shutsAt: number | null) => ({ ...start(hour(11)), shutsAt })
+    expect(groupMoment([shutting(null), shutting(hour(14)), shutting(hour(13))])).toEqual(shutting(hour(13)))
+  })
 
   it('is the earliest that hands must keep, and the latest that time has to bring', () => {
     expect(groupMoment([])).toBeNull()

@@ -5,9 +5,9 @@ const ledgers = (...numbers: number[]) => numbers.map(no => `Ledger ${no}`)
 
 describe('names of a group', () => {
   it('puts runs of numbers together', () => {
-    expect(groupNames(ledgers(1, 2, 3, 4, 6))).toBe('Ledgers 1–4 and 6')
+    expect(groupNames(ledgers(1, 2, 3, 4, 6))).toBe('Ledgers 1–\u20604 and 6')
     expect(groupNames(['Tide box 3', 'Tide box 4'])).toBe('Tide boxes 3 and 4')
-    expect(groupNames(ledgers(7, 1, 3, 2))).toBe('Ledgers 1–3 and 7')
+    expect(groupNames(ledgers(7, 1, 3, 2))).toBe('Ledgers 1–\u20603 and 7')
     expect(groupNames(ledgers(5))).toBe('Ledger 5')
     expect(groupNames(ledgers(2, 4, 6))).toBe('Ledgers 2, 4 and 6')
   })

@@ -17,13 +17,18 @@ describe('the words of a material sheet', () => {
   })
   it('turn a figure into the studio’s units', () => {
     expect(figureText({ low: null, typical: 10, high: null, unit: 'C' }, 'us')).toBe('50 °F')
-    expect(figureText({ low: 50, typical: 80, high: 120, unit: 'µm' }, 'metric')).toBe('80 µm, between 50 µm and 120 µm')
+    expect(figureText({ low: 50, typical: 80, high: 120, unit: 'µm' }, 'metric')).toBe('80 µm, between 50 and 120 µm')
+    expect([timeRange({ low: 2880, typical: 4320, high: 5760 }), timeRange({ low: 30, typical: 60, high: 120 }), timeRange({ low: 61, typical: 70, high: 80 })]).toEqual(['3 days, between 2 and 4 days', '1 h, between 30 min and 2 h', '1 h 10 min, between 1 h 1 min and 1 h 20 min'])
     // 25.4 µm to the mil.
     expect(figureText({ low: null, typical: 76.2, high: null, unit: 'µm' }, 'us')).toBe('3 mil')
   })
   it('say where a figure is from once', () => {
     expect(sourceText({ source: 'planning value', key: 'planning value' })).toBe('a planning value of ours')
-    expect(sourceText({ source: 'trade article, sign enamel, seen', key: 'S' })).toBe('trade article, sign enamel, seen (read)')
+    expect(sourceText({ source: 'trade article, sign enamel, seen', key: 'S' })).toBe('trade article, sign enamel, seen')
+    expect(sourceText({ source: 'trade page, hide glue, seen', key: 'S-' })).toBe('trade page, hide glue, seen (second hand)')
     expect(sourceText({ source: 'common practice', key: 'CP' })).toBe('common practice')
+    expect(sourceText({ source: 'from memory: check the data sheet', key: 'M' })).toBe('from memory: check the data sheet')
+    expect(sourceText({ source: 'the studio’s own figure', key: 'own' })).toBe('the studio’s own figure')
+    expect(sourceText({ source: 'a neighbour', key: 'own' })).toBe('a neighbour (the studio’s own)')
   })
 })

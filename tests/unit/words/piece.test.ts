@@ -29,7 +29,7 @@ describe('the reason of several rungs', () => {
   it('is said once for the film, and no more at each rung', () => {
     const rungs = [rung(cold), rung({ ...cold, likelyAt: at('16:00') }), rung({ likelyAt: at('18:00'), reason: 'too-damp' })]
     const why = sharedReason(rungs)
-    expect(why && reasonSentence(why)).toBe('Below the material’s minimum temperature.'.replace('’', '\''))
+    expect(why && reasonSentence(why)).toBe('Below the material’s minimum temperature.')
     expect(rungs.map(each => rungText(each, clock, why))).toEqual(['likely 14:20; test it', 'likely 16:00; test it', 'likely 18:00; too damp to promise: test it'])
     expect(rungText(rung({ reason: 'below-minimum' }), clock, why)).toBe('only after a touch test')
   })
@@ -70,7 +70,7 @@ describe('the history', () => {
 
 describe('a step', () => {
   it('names all it waits for', () => {
-    expect(waitsForText(['Gesso', 'Glue up', 'PVA on the spine'])).toBe('waits for gesso, glue up and PVA on the spine')
+    expect(waitsForText(['Gesso', 'Glue up', 'PVA on the spine'])).toBe('waits for “Gesso”, “Glue up” and “PVA on the spine”')
     expect(waitsForText([])).toBe('waits')
   })
   it('that no schedule asked for says why it is there', () => {

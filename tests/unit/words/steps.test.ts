@@ -2,8 +2,8 @@ import { describe, expect, it } from 'vitest'
 import { actKinds, doubtCauses, holds, milestoneNames, stepKinds, stepStatuses } from '#shared/terms'
 import { studioZone } from '#shared/time'
 import { stepStates } from '#shared/verdict/begin'
-import { beginReason, momentReason, momentText, stepStateText } from '#shared/words/moments'
-import { actKeys, actText, doneKeys, lowerFirst, milestoneText, stepAct, stepNoun, takenBack, timeKeys } from '#shared/words/steps'
+import { aboutText, beginReason, lateWhy, momentReason, momentText, stepStateText } from '#shared/words/moments'
+import { actKeys, actText, doneKeys, lowerFirst, milestoneText, nameless, stepAct, stepLabel, stepNoun, takenBack, timeKeys, titled } from '#shared/words/steps'
 import type { BeginReason } from '#shared/verdict/begin'
 import type { NextMoment } from '#shared/verdict/next'
 import { hour, minute } from '../verdict/facts'
@@ -14,19 +14,24 @@ const start = (some: number, all: number, at = hour(14) + 35 * minute): NextMome
 
 describe('next moments in words', () => {
   it('says the last moment to start, and the window only as its reason', () => {
-    expect(momentText(start(2, 2), clock)).toBe('start second varnish by 14:35 to do both')
-    expect(momentText(start(12, 12), clock)).toBe('start second varnish by 14:35 to do all 12')
-    expect(momentText(start(4, 12), clock)).toBe('start second varnish by 14:35 to do the first 4 of 12')
-    expect(momentText(start(1, 1), clock)).toBe('start second varnish by 14:35')
-    expect(momentText(start(2, 2), { ...clock, now: hour(15) })).toBe('late: second varnish was to start by 14:35 to do both')
+    expect(momentText(start(2, 2), clock)).toBe('start “Second varnish” by 14:35 to do both')
+    expect(momentText(start(12, 12), clock)).toBe('start “Second varnish” by 14:35 to do all 12')
+    expect(momentText(start(4, 12), clock)).toBe('start “Second varnish” by 14:35 to do the first 4 of 12')
+    expect(momentText(start(1, 2), clock)).toBe('start “Second varnish” by 14:35 to do the first of 2')
+    expect(momentText(start(1, 1), clock)).toBe('start “Second varnish” by 14:35')
+    expect(momentText(start(2, 2), { ...clock, now: hour(15) })).toBe('late: “Second varnish” was to start by 14:35 to do both')
     expect(momentReason(start(2, 2), clock)).toBe('the window shuts at 15:05')
     expect(momentReason(start(2, 2), { ...clock, now: hour(16) })).toBe('the window shut at 15:05')
   })
 
   it('says what may begin, now or from when', () => {
-    const sanding = { kind: 'may begin' as const, stepId: 1, at: hour(13) + 55 * minute, what: 'Sanding', stepKind: 'light sanding' as const }
+    const sanding = { kind: 'may begin' as const, stepId: 1, at: hour(13) + 55 * minute, what: 'Sanding', stepKind: 'light sanding' as const, plannedAt: null }
     expect(momentText({ ...sanding, open: false }, clock)).toBe('sand lightly from 13:55')
     expect(momentText({ ...sanding, open: true }, clock)).toBe('sand lightly')
+    // What the plan has for later is told beside what may begin already; within five minutes it is now.
+    expect(momentText({ ...sanding, open: true, plannedAt: hour(14) + 42 * minute }, clock)).toBe('sand lightly from now, planned 14:40')
+    expect(momentText({ ...sanding, open: true, plannedAt: hour(13.5) + 4 * minute }, clock)).toBe('sand lightly')
+    expect([aboutText({ ...sanding, open: false }, clock), aboutText({ ...sanding, open: true }, clock), aboutText(start(2, 2), clock)]).toEqual(['from 13:55', 'from now', 'start by 14:35 to do both'])
     expect(momentReason({ ...sanding, open: true }, clock)).toBeNull()
   })
 
@@ -51,17 +56,18 @@ const reasons: BeginReason[] = [
 
 describe('steps in words', () => {
   it('says what a step waits for', () => {
-    expect(beginReason({ code: 'drying', step, milestone: 'dry-to-sand-lightly' })).toBe('waits until gesso is dry to sand lightly')
+    expect(beginReason({ code: 'drying', step, milestone: 'dry-to-sand-lightly' })).toBe('waits until “Gesso” is dry to sand lightly')
     expect(beginReason({ code: 'no promise', step, reason: 'too-damp' })).toBe('too damp to promise: only after a touch test')
-    expect(stepStateText('waits for', { code: 'waits for', step })).toBe('waits for gesso')
+    expect(stepStateText('waits for', { code: 'waits for', step })).toBe('waits for “Gesso”')
     expect(stepStateText('set aside', null, 'cracked')).toBe('set aside: cracked')
-    expect(stepStateText('late', { code: 'window shut', step })).toBe('late: the window after gesso has shut')
+    expect(stepStateText('late', { code: 'window shut', step })).toBe('late: the window after “Gesso” has shut')
     expect(stepStateText('late', { code: 'may begin' })).toBe('late')
+    expect(lateWhy(hour(15) + 5 * minute, clock)).toBe('late: the window shuts at 15:05')
   })
 
   it('keeps a name that is shouted', () => {
     expect([lowerFirst('PVA on the spine'), lowerFirst('Second varnish'), lowerFirst('')]).toEqual(['PVA on the spine', 'second varnish', ''])
-    expect([stepAct('light sanding', 'x'), stepNoun('light sanding', 'x'), stepAct('coat', 'Gesso'), stepNoun('bench work', 'Sewing')]).toEqual(['sand lightly', 'light sanding', 'gesso', 'sewing'])
+    expect([stepAct('light sanding', 'x'), stepNoun('light sanding', 'x'), stepAct('coat', 'Gesso'), stepNoun('bench work', 'Sewing'), stepLabel('bench work', 'Sewing'), titled(''), titled(nameless)]).toEqual(['sand lightly', 'light sanding', 'gesso', '“Sewing”', 'sewing', nameless, nameless])
   })
 
   it('tells what was done', () => {
@@ -72,6 +78,7 @@ describe('steps in words', () => {
     expect(actText('it is out', { hold: 'clamps' })).toBe('out of the clamps')
     expect(actText('moved', { place: 'Shelf B' })).toBe('moved to Shelf B')
     expect(actText('air', { air: 'warm air' })).toBe('warm air on it')
+    expect(actText('rags answered', { answer: 'in water can' })).toBe('rags: in the water can')
   })
 
   it('has words for everything and grants nothing', () => {

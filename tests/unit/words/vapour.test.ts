@@ -6,7 +6,7 @@ const coat = (piece: string, changes: object = {}) => ({ id: piece, piece, mater
 
 describe('what adds to the air of a room', () => {
   it('names the pieces of one material together, with all they give off', () => {
-    expect(contributionLines([coat('Tray 1'), coat('Tray 2'), coat('Tray 3', { grams: 1.5 })])).toEqual([{ key: 'Shellac false', says: 'Trays 1–3: Shellac', grams: 5.5 }])
+    expect(contributionLines([coat('Tray 1'), coat('Tray 2'), coat('Tray 3', { grams: 1.5 })])).toEqual([{ key: 'Shellac false', says: 'Trays 1–\u20603: Shellac', grams: 5.5 }])
   })
   it('keeps what is planned apart from what is wet, and names a piece with two coats once', () => {
     const lines = contributionLines([coat('Tray 1'), coat('Tray 1', { planned: true }), coat('Tray 1', { planned: true }), coat('Tray 1', { material: '' })])

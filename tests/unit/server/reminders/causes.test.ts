@@ -21,14 +21,14 @@ describe('the last moment to start', () => {
     // The words are those of the moment it is made: 13:20.
     const [call, ...more] = wanted(test, noon + minutes(80), 'last moment to start')
     expect(more).toEqual([])
-    expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Ledgers, 12 pieces. Start second coat by 13:50 to do all 12, by 14:35 for the first 4.' })
+    expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Ledgers, 12 pieces. Start “Second coat” by 13:50 to do all 12, by 14:35 for the first 4.' })
   })
 
   it('comes again when only the first few can still be done', () => {
     const { test } = withPlan()
     const [call] = wanted(test, noon + minutes(111), 'last moment to start')
     // Half an hour before 14:35 is 14:05, later than 13:50.
-    expect(call).toMatchObject({ stage: 'first few', dueAt: noon + minutes(125), body: 'Ledgers, 12 pieces. There is no longer time for all 12. Start second coat by 14:35 to do the first 4 of 12.' })
+    expect(call).toMatchObject({ stage: 'first few', dueAt: noon + minutes(125), body: 'Ledgers, 12 pieces. There is no longer time for all 12. Start “Second coat” by 14:35 to do the first 4 of 12.' })
     expect(wanted(test, noon + minutes(156), 'last moment to start')).toEqual([])
   })
 
@@ -41,7 +41,7 @@ describe('the last moment to start', () => {
     const { id: sessionId } = test.db.insert(planSession).values({ studioId: test.studioId, planId: plan, family: 'varnish', startsAt: noon, endsAt: noon, setupMin: 5 }).returning({ id: planSession.id }).get()
     for (const turnId of turns.slice(2)) test.db.insert(planEntry).values({ studioId: test.studioId, planId: plan, turnId, sessionId, startsAt: noon + minutes(100), dueAt: noon + minutes(100), endsAt: noon + minutes(160), lastStartAt: noon + minutes(150) }).run()
     const calls = wanted(test, noon, 'last moment to start')
-    expect(calls.map(call => call.body)).toEqual(['Ledgers, 2 pieces. Start second coat by 13:50 to do both.', 'Ledgers, 2 pieces. Start second coat by 14:30 to do both.'])
+    expect(calls.map(call => call.body)).toEqual(['Ledgers, 2 pieces. Start “Second coat” by 13:50 to do both.', 'Ledgers, 2 pieces. Start “Second coat” by 14:30 to do both.'])
     expect(calls[0]?.groupKey).toBe(first?.groupKey)
     expect(calls[1]?.groupKey).not.toBe(first?.groupKey)
   })
@@ -120,7 +120,7 @@ describe('before you leave', () => {
     expect(call).toMatchObject({ dueAt: noon + minutes(330), groupKey: '2026-06-02', title: 'Before you leave at 18:00' })
     expect(call?.body.split('\n')).toEqual([
       'Oily rags from Bench room: say where they are.',
-      'Shuts overnight: Ledgers. Start second coat by Wed 3:00.',
+      'Shuts overnight: Ledgers. Start “Second coat” by Wed 3:00.',
       'Bench room: a film is still drying. The times count on the heating tonight.',
       'Lids on: Wood varnish.',
     ])

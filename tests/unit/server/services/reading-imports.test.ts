@@ -9,6 +9,7 @@ import { exportReadings } from '~~/server/services/reading-export'
 import { pieceStates } from '~~/server/services/piece-states'
 import { bringInFile, removeImport } from '~~/server/services/reading-imports'
 import { addReading } from '~~/server/services/readings'
+import { temperatureText } from '#shared/units'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 const now = Date.parse('2026-06-10T12:00:00Z')
@@ -110,9 +111,20 @@ describe('the course of the air', () => {
     // Six hours of readings end 2 h 10 min ago; a point every half-hour: 4:00 to 9:30 UTC measured, 10:00 to 12:00 reckoned, and 18 hours ahead.
     expect(bench?.points.map(each => each.reckoned)).toEqual([...Array(12).fill(false), ...Array(5 + 36).fill(true)])
     // 20 °C and 50 % is the sheets' own climate: every film at its sheet's speed. Table of the Wood Handbook: 9.3 % at 70 °F and 50 %, hardly another at 68.
-    expect(bench?.points[0]).toMatchObject({ at: now - 8 * hour, tempC: 20, rh: 0.5, dewPointC: 9.27, speeds: [1, 1, 1, 1, 1, 1] })
+    expect(bench?.points[0]).toMatchObject({ at: now - 8 * hour, tempC: 20, rh: 0.5, speeds: [1, 1, 1, 1, 1, 1] })
+    expect(bench?.points[0]?.dewPointC).toBeCloseTo(9.27, 2)
     expect(bench?.points[0]?.boardMoisture).toBeCloseTo(9.3, 0)
     expect(spray?.points).toEqual([])
+  })
+
+  // Near 51 % the dew point passes 9.55 °C, where rounding first to hundredths and then to tenths says another tenth than rounding once.
+  it.each(Array.from({ length: 12 }, (_, index) => 0.5085 + index * 0.0001))('says one dew point for one air, here at %f', (rh) => {
+    const of = made()
+    bringInFile(of.db, of.studioId, of.members.maker.id, of.rooms.bench, request([now], 20, rh), now)
+    const told = airNow(of.db, of.studioId, now).find(each => each.roomId === of.rooms.bench)
+    const drawn = airCourses(of.db, of.studioId, 'day', now).find(each => each.roomId === of.rooms.bench)?.points.find(each => each.at === now)
+    expect(told?.dewPointC).not.toBeNull()
+    expect(drawn && [drawn.dewPointC, temperatureText(drawn.tempC, 'metric')]).toEqual(told && [told.dewPointC, temperatureText(told.tempC, 'metric')])
   })
 })
 
