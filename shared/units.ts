@@ -19,9 +19,9 @@ export const cfm = (cubicMetresPerHour: number) => cubicMetresPerHour / cubicMet
 /** Cubic feet a minute to m³/h. */
 export const cubicMetresPerHour = (cfm: number) => cfm * cubicMetresPerHourPerCfm
 
-/** At most so many decimals, without trailing zeros or a negative zero. */
+/** At most so many decimals, without trailing zeros or a negative zero; below it with a true minus. */
 function figure(value: number, decimals: number): string {
-  return String(Number(value.toFixed(decimals)) + 0)
+  return String(Number(value.toFixed(decimals)) + 0).replace('-', '−')
 }
 
 /** "19.4 °C" or "67 °F". */

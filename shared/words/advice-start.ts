@@ -21,7 +21,7 @@ export function startAdviceText(facts: StartAdvice, units: Units = 'metric'): st
     case 'never-over': return `${facts.text} Strip the film beneath, or leave this out.`
     case 'acclimatise': return `Wood and board here come to rest at ${facts.rest.toFixed(1)} % moisture; these are near ${facts.moisture.toFixed(1)} %, from where they lay. Let them lie here till ${facts.when}, or the joint is strained as they settle.`
     case 'still-air': return 'Somebody said that the air moves here: leaf wants it still.'
-    case 'pot-life': return `At ${temperatureText(facts.tempC, units).replace('-', '−')} what is mixed lasts about ${Math.round(facts.minutes)} min; the sheet says ${Math.round(facts.sheetMinutes)}. A deep pot goes off sooner: mix less.`
+    case 'pot-life': return `At ${temperatureText(facts.tempC, units)} what is mixed lasts about ${Math.round(facts.minutes)} min; the sheet says ${Math.round(facts.sheetMinutes)}. A deep pot goes off sooner: mix less.`
     case 'pack-early': return `Wrapped before ${facts.when} it may print: two days at least, longer in damp air, and never finish to finish.`
   }
 }

@@ -19,9 +19,6 @@ export type AdviceFacts =
 
 export type AdviceCode = AdviceFacts['code']
 
-/** Degrees as they are said, with a true minus. */
-const degrees = (tempC: number, units: Units) => temperatureText(tempC, units).replace('-', '−')
-
 const percent = (share: number) => `${Math.round(share * 100)} %`
 
 /** Why a film may haze: how near the dew point the air is, and whose limit that is under. */
@@ -30,7 +27,7 @@ function hazeReason({ gapC, limitC, seenHere }: Extract<AdviceFacts, { code: 'bl
   return `The air is ${temperatureGapText(gapC, units)} above its dew point; ${seenHere ? `going by what was seen here, it may haze under ${limit}` : `under ${limit} such a film may haze`}.`
 }
 
-const warmer = (warmC: number | null, units: Units) => warmC === null ? '' : `, or warm it to ${degrees(warmC, units)}`
+const warmer = (warmC: number | null, units: Units) => warmC === null ? '' : `, or warm it to ${temperatureText(warmC, units)}`
 
 /** The sentence for one piece of advice about a film that is on. */
 export function adviceText(facts: AdviceFacts, units: Units = 'metric'): string {
@@ -40,9 +37,9 @@ export function adviceText(facts: AdviceFacts, units: Units = 'metric'): string 
     case 'dew-margin': return facts.when === null
       ? `The air is less than ${margin} above its dew point: hold, water settles on the work.`
       : `Less than ${margin} above the dew point from ${facts.when}: bring it in by then.`
-    case 'below-minimum-ahead': return `The room falls under ${degrees(facts.minTempC, units)} at ${facts.when}, while this is still wet: bring it in by then.`
-    case 'chilled': return `Under ${degrees(facts.minTempC, units)} from ${facts.when} while it was wet: test it or strip it before going on.`
-    case 'cold-before-strength': return `The room falls under ${degrees(facts.minTempC, units)} at ${facts.when}, before the joint has its strength: glue that cold dries weak. Keep it warm until then.`
+    case 'below-minimum-ahead': return `The room falls under ${temperatureText(facts.minTempC, units)} at ${facts.when}, while this is still wet: bring it in by then.`
+    case 'chilled': return `Under ${temperatureText(facts.minTempC, units)} from ${facts.when} while it was wet: test it or strip it before going on.`
+    case 'cold-before-strength': return `The room falls under ${temperatureText(facts.minTempC, units)} at ${facts.when}, before the joint has its strength: glue that cold dries weak. Keep it warm until then.`
     case 'too-damp': return `At ${percent(facts.ceiling)} humidity or more no time is promised: dry the room${warmer(facts.warmC, units)}, to get under it.`
     case 'dry-air': return `The air holds less than ${Number((facts.floor * 1000).toFixed(1))} g of water in a kilogram: this cures from moisture and hardly moves.`
     case 'blush': return `${hazeReason(facts, units)} Wait, put retarder in, or go on and watch for haze.`
@@ -62,9 +59,9 @@ export function beforeText(facts: AdviceFacts, units: Units = 'metric'): string 
     case 'dew-margin': return facts.when === null
       ? `The air is less than ${margin} above its dew point: hold it back, water would settle on the work.`
       : `Less than ${margin} above the dew point from ${facts.when}, and this would still be wet: have it in somewhere drier by then.`
-    case 'below-minimum-ahead': return `The room falls under ${degrees(facts.minTempC, units)} at ${facts.when}, and this would still be wet: let it dry where it stays warmer.`
-    case 'chilled': return `The room is under ${degrees(facts.minTempC, units)}, the least for this: warm it first, or take the work where it is warmer.`
-    case 'cold-before-strength': return `The room falls under ${degrees(facts.minTempC, units)} at ${facts.when}, before the joint would have its strength: glue that cold dries weak. Clamp it where it stays warmer.`
+    case 'below-minimum-ahead': return `The room falls under ${temperatureText(facts.minTempC, units)} at ${facts.when}, and this would still be wet: let it dry where it stays warmer.`
+    case 'chilled': return `The room is under ${temperatureText(facts.minTempC, units)}, the least for this: warm it first, or take the work where it is warmer.`
+    case 'cold-before-strength': return `The room falls under ${temperatureText(facts.minTempC, units)} at ${facts.when}, before the joint would have its strength: glue that cold dries weak. Clamp it where it stays warmer.`
     case 'too-damp': return `At ${percent(facts.ceiling)} humidity or more this is not to go on: dry the room first${warmer(facts.warmC, units)}.`
     case 'dry-air': return `The air holds less than ${Number((facts.floor * 1000).toFixed(1))} g of water in a kilogram: this cures from moisture and would hardly move. Damp one face, or the room.`
     case 'blush': return `${hazeReason(facts, units)} Wait, or put retarder in and watch for haze.`
@@ -91,7 +88,7 @@ export const besideSolventBefore = (code: string): string | null => code === 'ch
 
 /** How long a mixed quantity lasts at the room's warmth, against its sheet. Minutes. */
 export function potLifeText({ room, minutes, sheetMinutes, tempC }: { room: string, minutes: number, sheetMinutes: number, tempC: number }, units: Units = 'metric'): string {
-  return `${room}, ${degrees(tempC, units)}: what is mixed lasts about ${Math.round(minutes)} min; the sheet says ${Math.round(sheetMinutes)}. A deep pot goes off sooner.`
+  return `${room}, ${temperatureText(tempC, units)}: what is mixed lasts about ${Math.round(minutes)} min; the sheet says ${Math.round(sheetMinutes)}. A deep pot goes off sooner.`
 }
 
 const weekdays = ['Sun', 'Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat']

@@ -35,7 +35,7 @@ export const arrangeWords = {
   board: 'To the board',
   moved: (place: string, room: string, no: number, of: number) => `${place}: ${no} of ${of} in ${room}.`,
   roomMoved: (room: string, no: number, of: number) => `${room}: room ${no} of ${of}.`,
-  holds: (place: string, capacity: number) => `${place} has ${capacity} places.`,
+  holds: (place: string, capacity: number) => `${place} has ${capacity} ${capacity === 1 ? 'place' : 'places'}.`,
   added: (place: string, room: string) => `${place} is added to ${room}.`,
   undone: (what: string) => `Undone: ${what}`,
 } as const

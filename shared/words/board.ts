@@ -59,11 +59,11 @@ export function keepOutText(opensBy: string | null): string {
   return `${opensBy ?? 'A maker'} opens this room.`
 }
 
-const free: Partial<Record<string, string>> = { rail: 'hooks', hook: 'hooks', clamps: 'clamps' }
+const free: Partial<Record<string, string>> = { rail: 'hook', hook: 'hook', clamps: 'clamp' }
 
 /** "6 of 7 places", "2 of 4 hooks"; over its capacity too. */
 export function takenText({ kind, taken, capacity }: Pick<PlaceState, 'kind' | 'taken' | 'capacity'>): string {
-  return `${taken} of ${capacity} ${free[kind] ?? 'places'}`
+  return `${taken} of ${capacity} ${free[kind] ?? 'place'}${capacity === 1 ? '' : 's'}`
 }
 
 /** Reasons that the drawing beside the words, or the room's own line, says already. */
@@ -117,5 +117,5 @@ export const pieceSheetWords = {
   move: (batch: string) => `Move ${batch}`,
   bare: 'Nothing on it that still changes.',
   where: (place: string, room: string) => `${place}, ${room}`,
-  done: (done: number, of: number) => `${done} of ${of} steps done`,
+  done: (done: number, of: number) => `${done} of ${of} ${of === 1 ? 'step' : 'steps'} done`,
 } as const

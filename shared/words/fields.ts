@@ -10,7 +10,7 @@ export const fields = {
   studioName: 'Give the studio a name, at most 80 characters.',
   zone: 'Choose a time zone, such as Europe/London.',
   units: 'Units are metric or us.',
-  usualTemp: 'The usual temperature is a number from -40 to 60 °C.',
+  usualTemp: 'The usual temperature is a number from −40 to 60 °C.',
   usualRh: 'The usual humidity is a number from 0 to 1, such as 0.55.',
   role: 'A role is owner, maker or helper.',
   stepKinds: 'List kinds of step, such as coat or light sanding.',

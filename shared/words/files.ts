@@ -40,5 +40,5 @@ export const sheetFileWords = {
   removeAsk: (name: string) => `Take ${name} away?`,
   removeSays: 'The file is deleted. Its figures stay as they are.',
   since: (edition: number, size: string) => `with edition ${edition}, ${size}`,
-  many: (most: number) => `A material has at most ${most} data sheets. Take one away first.`,
+  many: (most: number) => `A material has at most ${most === 1 ? 'one data sheet' : `${most} data sheets`}. Take one away first.`,
 } as const

@@ -20,7 +20,7 @@ export const materialWords = {
   waitingOne: 'Fetching the sheet',
   back: 'All materials',
   edition: (no: number) => `edition ${no}`,
-  found: (count: number, of: number) => count === of ? `${of} materials` : `${count} of ${of} materials`,
+  found: (count: number, of: number) => `${count === of ? of : `${count} of ${of}`} ${of === 1 ? 'material' : 'materials'}`,
   ladder: 'How it hardens',
   ladderIntro: 'From the brush to cured. The pale end of each bar is the doubt: quickest, usual and slowest on the sheet.',
   columns: { rung: 'Milestone', low: 'quickest', typical: 'usual', high: 'slowest', driver: 'dries by', test: 'Test by hand', source: 'Where from' },

@@ -50,7 +50,7 @@ export const pinDialog = {
 export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${asSentence(kind === 'work' ? stepLabel(stepKind, step) : step).slice(0, -1)}, ${groupNames(pieces)}`
 
 /** "9:15 to 10:40", with the day when it is another. */
-export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${clockFace(clock.zone.wall(toAt).minutes)}`
+export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${localDate(fromAt, clock.zone) === localDate(toAt, clock.zone) ? clockFace(clock.zone.wall(toAt).minutes) : clockTime(toAt, clock)}`
 
 /** What is known of a block beside its time, one sentence each. */
 export function blockNotes(block: PlanBlock, clock: Clock): string[] {

@@ -258,7 +258,7 @@ export const editionWords = {
 /** The offer to keep what was done as a schedule. */
 export const keepWords = {
   title: 'Keep this as a finishing schedule?',
-  says: (piece: string, times: number) => `What is on ${piece} was put on alike ${times} times, without a schedule.`,
+  says: (piece: string, times: number) => `What is on ${piece} was put on alike ${times === 1 ? 'once' : `${times} times`}, without a schedule.`,
   key: 'Look at it and keep it',
   dismiss: 'Not this',
   ofPiece: 'Keep this as a finishing schedule',

@@ -170,5 +170,6 @@ export const installationWords = {
   plain: 'Over plain http in the studio’s network. The board, the acts and the handling sheet work. This does not:',
   costs: ['Calls to this browser: a push needs https. Mail still reaches you.', 'The service worker, which receives calls while the page is closed.', 'The camera, for photos and for scanning tags. Names can be typed instead.'],
   remedy: 'A certificate and a key on the server, given with STILLWET_HOST, bring them back.',
+  remedyOthers: 'Ask an owner for an address that begins with https.',
   looking: 'Looking how this page was opened.',
 } as const

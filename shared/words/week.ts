@@ -4,6 +4,7 @@ import type { BatchLoad, Evidence, Load, WeekDay } from '#shared/schemas/week'
 import type { PlaceKind } from '#shared/terms'
 import { addDays, ago, clockTime, fromLocal, localDate, roughTime, span, weekdayOf } from '#shared/time'
 import type { Clock } from '#shared/time'
+import { listText } from '#shared/words/group'
 
 /** What the page of the week says. */
 export const weekWords = {
@@ -15,7 +16,7 @@ export const weekWords = {
   resource: 'What',
   people: 'People',
   today: 'today',
-  freeAllWeek: (names: readonly string[]) => `Free all week: ${listed(names).toLowerCase()}.`,
+  freeAllWeek: (names: readonly string[]) => `Free all week: ${listText(names).toLowerCase()}.`,
   perDay: 'Places: the fullest moment of the day. People: hours still planned against hours still there.',
   waitsFor: (time: string) => `${time} waiting`,
   waitsKey: 'Waiting: what pieces that are ready wait for it, all pieces together.',
@@ -119,7 +120,7 @@ export function standingText(batch: BatchLoad): string {
     case 'near': return 'in time, if nothing dries slower'
     case 'in time': return 'in time'
     case 'no date': return 'no date given'
-    case 'no time': return `${batch.without} of ${batch.left} steps without a time`
+    case 'no time': return `${batch.without} of ${batch.left} ${batch.left === 1 ? 'step' : 'steps'} without a time`
     case 'done': return 'nothing left for hands'
   }
 }
@@ -147,8 +148,6 @@ export function dayTicks(fromAt: number, toAt: number, { zone, now }: Clock): { 
   return ticks
 }
 
-const listed = (names: readonly string[]) => names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names[names.length - 1]}`
-
 /** What the page rests on and how old that is, one sentence each. */
 export function evidenceSentences({ standing, oldestSeenAt, missing, unread, oldestReadAt }: Evidence, planMadeAt: number | null, now: number): string[] {
   return [
@@ -156,7 +155,7 @@ export function evidenceSentences({ standing, oldestSeenAt, missing, unread, old
     ...standing === 0 || oldestSeenAt === null ? [] : [`${standing === 1 ? 'One piece stands' : `${standing} pieces stand`} in the studio; the one not looked at for longest was seen ${ago(oldestSeenAt, now)}.`],
     ...missing === 0 ? [] : [missing === 1 ? 'One piece is not where it should be.' : `${missing} pieces are not where they should be.`],
     ...oldestReadAt === null ? [] : [`The air noted longest ago was noted ${ago(oldestReadAt, now)}.`],
-    ...unread.length === 0 ? [] : [`Nobody has noted the air in ${listed(unread)}.`],
+    ...unread.length === 0 ? [] : [`Nobody has noted the air in ${listText(unread)}.`],
   ]
 }
 

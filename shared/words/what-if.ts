@@ -69,6 +69,8 @@ function daysWaited({ waitedMin }: OneMore, days: readonly string[]): string {
   return named.length === 0 || named.length === days.length ? '' : ` on ${listText(named)}`
 }
 
+const countOf = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
+
 /** "Clamps hold the plan back." with what pieces wait, what one more would buy, and for which batch. Only what was reckoned. */
 export function bottleneckSentence(state: BottleneckState, clock: Clock): { head: string, rest: string } {
   const first = state.more.find(each => isWorth(each.difference))
@@ -82,7 +84,7 @@ export function bottleneckSentence(state: BottleneckState, clock: Clock): { head
     ...batch?.beforeAt != null && batch.afterAt !== null ? [`finish ${batch.name} ${clockTime(batch.afterAt, clock)} instead of ${clockTime(batch.beforeAt, clock)}`] : [],
     ...gainedTimes(difference).length === 0 ? [] : [`give ${listText(gainedTimes(difference).map(each => each.name))} a time at all`],
     ...less >= 30 ? [`take ${longSpan(less)} off the lateness of all batches together`] : [],
-    ...difference.windowsAfter < difference.windowsBefore ? [difference.windowsAfter === 0 ? 'let every window be kept' : `let ${difference.windowsBefore - difference.windowsAfter} more windows be kept`] : [],
+    ...difference.windowsAfter < difference.windowsBefore ? [difference.windowsAfter === 0 ? 'let every window be kept' : `let ${countOf(difference.windowsBefore - difference.windowsAfter, 'more window')} be kept`] : [],
   ]
   return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${listText(buys)}.`].join(' ') }
 }

@@ -49,6 +49,14 @@ describe('the catalogue', () => {
     const said = [...catalogue, ...filesBelow('shared/library', /\.ts$/)].flatMap(file => spoken(file).map(text => ({ file, text: text.replaceAll('\\\'', '\'') })))
     expect(said.filter(({ text }) => /[a-z]'[a-z]/i.test(text) && !text.includes('${'))).toEqual([])
   })
+  it('has one plain space between a figure and its unit, and no other kind of space', () => {
+    const said = catalogue.flatMap(file => spoken(file).map(text => ({ file, text })))
+    expect(said.filter(({ text }) => /[\d}](°|%|µm|mm\b|min\b|kg\b|m²|m³)|[\u00a0\u2007\u2009\u202f]| {2}\S/.test(text) && !text.includes('padEnd'))).toEqual([])
+  })
+  it('has no hyphen for a dash or a minus', () => {
+    const said = catalogue.flatMap(file => spoken(file).map(text => ({ file, text })))
+    expect(said.filter(({ text }) => / - | -\d| — /.test(text) && !/[{}]/.test(text))).toEqual([])
+  })
   it('says no sentence twice', () => {
     const sentences = catalogue.flatMap(file => spoken(file).filter(text => /^[A-Z].{20,}\.$/.test(text)))
     expect(sentences.filter((text, n) => sentences.indexOf(text) !== n)).toEqual([])

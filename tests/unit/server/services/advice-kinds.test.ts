@@ -149,7 +149,7 @@ const kinds: Record<AdviceCode | Exclude<StartAdvice['code'], 'still-air'>, Kind
   },
   'outside-measured': {
     // A flood coat is 2.5 times a normal one, a sealed ground 1.8 times slower.
-    about: 'coat', says: /^This coat is 4.5 times slower than the sheet's/,
+    about: 'coat', says: /^This coat is 4.5 times slower than the sheet’s/,
     wrong: (s) => {
       s.read(20, 0.5)
       coated(s, 'craft-acrylic', now, { size: 'flood', ground: 'sealed' })

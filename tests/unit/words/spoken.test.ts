@@ -1,0 +1,42 @@
+import { describe, expect, it } from 'vitest'
+import { studioZone } from '#shared/time'
+import { temperatureText } from '#shared/units'
+import { takenText } from '#shared/words/board'
+import { toldWords } from '#shared/words/hands'
+import { goneText } from '#shared/words/piece'
+import { blockTime } from '#shared/words/plan-strips'
+import { putOnKey } from '#shared/words/put-on'
+import { problemText } from '#shared/words/schedule-problems'
+import { waitText } from '#shared/words/schedules'
+
+const at = (text: string) => Date.parse(`${text}:00Z`)
+const clock = { now: at('2026-04-07T10:00'), zone: studioZone('UTC') }
+
+describe('small sentences', () => {
+  it('say of what a key tells', () => {
+    expect([putOnKey('Shellac', 2), putOnKey('Shellac', 1), putOnKey(null, 2)]).toEqual(['Shellac is on 2 pieces', 'Shellac is on', 'It is on'])
+  })
+  it('have one colon where what is next is late', () => {
+    expect([toldWords.next('late: “Oil” was to start by 9:00'), toldWords.next('sand lightly from 13:55')]).toEqual(['Late: “Oil” was to start by 9:00.', 'Next: sand lightly from 13:55.'])
+  })
+  it('say of a span how long at the most, not till when', () => {
+    expect(waitText({ likelyMin: 180, giveTillMin: 300, promised: true })).toBe('likely 3 h, up to 5 h')
+  })
+  it('end where the next fact begins', () => {
+    expect(goneText(at('2026-04-06T09:00'), 'sold', clock)).toBe('Sold Mon 9:00.')
+  })
+  it('give the end of work its day when that is another', () => {
+    expect(blockTime({ fromAt: at('2026-04-08T09:15'), toAt: at('2026-04-08T10:40') }, clock)).toBe('Wed 9:15 to 10:40')
+    expect(blockTime({ fromAt: at('2026-04-07T22:00'), toAt: at('2026-04-08T00:30') }, clock)).toBe('22:00 to Wed 0:30')
+  })
+  it('have a true minus below nought', () => {
+    expect(temperatureText(-3.25, 'metric')).toBe('−3.3 °C')
+  })
+  it('count one hook as one', () => {
+    expect([takenText({ kind: 'hook', taken: 1, capacity: 1 }), takenText({ kind: 'clamps', taken: 2, capacity: 4 }), takenText({ kind: 'shelf', taken: 0, capacity: 7 })]).toEqual(['1 of 1 hook', '2 of 4 clamps', '0 of 7 places'])
+  })
+  it('name a step that has no name without quotes', () => {
+    const problem = { code: 'lays nothing' as const, step: 'a', other: null, what: null, minutes: null, steps: [] }
+    expect(problemText(problem as unknown as Parameters<typeof problemText>[0], { steps: [{ key: 'a', name: '' }] } as unknown as Parameters<typeof problemText>[1])).toBe('The step without a name lays nothing. Choose its material.')
+  })
+})
