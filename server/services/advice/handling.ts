@@ -1,5 +1,5 @@
-import { and, eq, inArray, isNull } from 'drizzle-orm'
-import { airNote, materialFigure } from '~~/db/schema'
+import { eq, inArray } from 'drizzle-orm'
+import { materialFigure } from '~~/db/schema'
 import type { Asked, Said } from '~~/server/services/advice/films'
 import { aboutTurn } from '~~/server/services/advice/soon'
 import type { SoonTurn } from '~~/server/services/advice/soon'
@@ -18,20 +18,17 @@ const packAfterMs = 48 * 60 * 60_000
 /** A pot life this near its sheet's needs no word: a share of it, planning value. */
 const nearSheet = 0.15
 
-/** What hands are to mind at a step: how long a mix lasts, leaf in moving air, packing too early. */
+/** What hands are to mind at a step: how long a mix lasts, packing too early. */
 export function handlingAdvice(asked: Asked, soon: readonly SoonTurn[]): Said[] {
   const say = (each: SoonTurn, facts: StartAdvice): Said => ({ ...aboutTurn(each), code: facts.code, text: startAdviceText(facts, asked.owner.units) })
   const pots = potLives(asked, soon)
-  const blown = movingParts(asked, soon)
   const zone = studioZone(asked.owner.zone)
   return soon.flatMap((each) => {
     const pot = pots(each)
-    const leaf = each.turn.waits.some(wait => wait.milestone === 'at-tack') && each.turn.partIds.some(id => blown.has(id))
     const newest = Math.max(0, ...(each.group?.films ?? []).filter(film => film.kind !== 'glue-up').map(film => film.endedAt))
     const early = each.turn.step.kind === 'packing' && each.at < newest + packAfterMs
     return [
       ...pot ? [say(each, pot)] : [],
-      ...leaf ? [say(each, { code: 'still-air' })] : [],
       ...early ? [say(each, { code: 'pack-early', when: clockTime(newest + packAfterMs, { now: asked.now, zone }) })] : [],
     ]
   })
@@ -52,11 +49,4 @@ function potLives({ db, owner, now }: Asked, soon: readonly SoonTurn[]) {
     const minutes = potLifeAt(figure.typical, sheet.reference.tempC, air.tempC)
     return Math.abs(minutes / figure.typical - 1) < nearSheet ? null : { code: 'pot-life', minutes, sheetMinutes: figure.typical, tempC: air.tempC }
   }
-}
-
-/** The parts at which somebody said that the air moves, and nobody since that it rests. */
-function movingParts({ db, owner }: Asked, soon: readonly SoonTurn[]): Set<number> {
-  const ids = [...new Set(soon.flatMap(each => each.turn.partIds))]
-  const rows = db.select({ partId: airNote.partId }).from(airNote).where(and(scoped(airNote, owner.id, eq(airNote.kind, 'moving'), isNull(airNote.toAt)), inArray(airNote.partId, ids))).all()
-  return new Set(rows.flatMap(row => row.partId ?? []))
 }

@@ -5,6 +5,7 @@ import type { Asked, Said } from '~~/server/services/advice/films'
 import { solventRoomsNow } from '~~/server/services/advice/films'
 import { overAdvice } from '~~/server/services/advice/over'
 import { handlingAdvice } from '~~/server/services/advice/handling'
+import { leafAdvice } from '~~/server/services/advice/leaf'
 import { aboutTurn, soonTurns } from '~~/server/services/advice/soon'
 import type { SoonTurn } from '~~/server/services/advice/soon'
 import type { Database } from '~~/server/utils/database'
@@ -21,7 +22,7 @@ import { beforeText, besideSolventBefore } from '#shared/words/advice'
 export function turnAdvice(asked: Asked): Said[] {
   const soon = soonTurns(asked)
   if (soon.length === 0) return []
-  return [...airAdvice(asked, soon), ...overAdvice(asked, soon), ...boardAdvice(asked, soon), ...handlingAdvice(asked, soon)]
+  return [...airAdvice(asked, soon), ...overAdvice(asked, soon), ...boardAdvice(asked, soon), ...handlingAdvice(asked, soon), ...leafAdvice(asked, soon)]
 }
 
 /** What the air of the room would do to a coat or a glue line that went on as soon as it may. Pieces that would fare alike are reckoned once. */
@@ -36,7 +37,7 @@ function airAdvice({ db, owner, now, gaps }: Asked, soon: readonly SoonTurn[]): 
     const { turn, at, group } = each
     const versionId = turn.step.materialVersionId ?? 0
     const how = howOf.get(turn.step.id)
-    const material = benches.materialFor(versionId, 0, [])
+    const material = benches.materialFor(versionId, 0)
     if (!how || !material) return []
     const key = [versionId, how.size, how.ground, group?.roomId, at].join(' ')
     const advice = known.get(key) ?? predictCoat(material, { appliedAt: at, size: how.size, ground: how.ground }, [{ clock: clockOf(group?.roomId ?? null), fromAt: at, toAt: null }], { now, hazeGapC: gaps.get(versionId) }).advice

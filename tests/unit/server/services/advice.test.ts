@@ -1,6 +1,6 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { airNote, coat, part } from '~~/db/schema'
+import { coat } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import { answerAdvice } from '~~/server/services/advice/answer'
 import { hazeGaps, hazeTold } from '~~/server/services/advice/answers'
@@ -88,16 +88,6 @@ describe('advice where it acts', () => {
     const ids = start(studio, 'painted-waxed-box', ['Box 1'])
     tell(studio, 'coat on', ids, { step: null, materialVersionId: studio.materialOf('shellac') })
     expect(codes(studio)).not.toContain('blush')
-  })
-
-  it('asks for still air where leaf is to be laid', () => {
-    const studio = testStudio(now)
-    read(studio, studio.rooms.bench, 20, 0.5)
-    const ids = start(studio, 'water-gilded-frame', ['Frame 1'])
-    const partId = studio.db.select().from(part).where(eq(part.pieceId, ids[0]!)).all()[0]!.id
-    studio.db.insert(airNote).values({ studioId: studio.studioId, partId, kind: 'moving', fromAt: now - hour }).run()
-    // Before the size is on nothing waits for leaf: the note alone says nothing of it.
-    expect(codes(studio)).not.toContain('still-air')
   })
 })
 
