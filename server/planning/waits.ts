@@ -76,7 +76,7 @@ export class WaitsToCome {
   }
 
   #filmOf(key: string, step: PlanFacts['steps'][number], roomId: number | null): FilmToCome | null {
-    const material = step.materialVersionId === null ? null : this.#benches.materialFor(step.materialVersionId, 0, [])
+    const material = step.materialVersionId === null ? null : this.#benches.materialFor(step.materialVersionId, 0)
     if (!material) return null
     const clock = this.#clocks.get(roomId) ?? this.#clockOf(roomId)
     this.#clocks.set(roomId, clock)

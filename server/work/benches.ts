@@ -3,11 +3,12 @@ import { benchSpeed } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { preparedMaterials } from '~~/server/work/materials'
+import { lessonOf } from '#shared/drying/bench-tests'
 import type { BenchTest } from '#shared/drying/learn'
 import { learnBench } from '#shared/drying/learn'
 import type { PreparedMaterial } from '#shared/drying/material'
 import { withLearned } from '#shared/drying/material'
-import type { DryingMaterial, TouchTest } from '#shared/drying/types'
+import type { DryingMaterial } from '#shared/drying/types'
 
 /** A test on its rung's clock, with the rows it came from. */
 export interface KeptTest extends BenchTest { testId: number, coatId: number }
@@ -35,24 +36,22 @@ function learnedMaterial(key: string, sheet: PreparedMaterial, tests: readonly K
   return learned
 }
 
-/** Whether a coat's own "not yet" stands: then what it taught the bench must not count for it a second time. */
-const ownStands = (tests: readonly TouchTest[]) => tests.some(test => !test.reached)
-
 /** The materials of a studio as its bench has them, by edition. */
 export function benchesOf(db: Database | Transaction, studioId: number, sheets: ReadonlyMap<number, DryingMaterial>) {
   const ids = [...sheets.keys()]
   const rows = ids.length === 0 ? [] : db.select().from(benchSpeed).where(scoped(benchSpeed, studioId, inArray(benchSpeed.materialVersionId, ids))).all()
   const states = new Map(rows.map(row => [row.materialVersionId, benchState(row.state)]))
   return {
-    /** The material for one coat: its own tests do not teach it, they bound it. Null for an edition that was not asked for. */
-    materialFor(versionId: number, coatId: number, own: readonly TouchTest[]): PreparedMaterial | null {
+    /** The material for one coat: its own "not yet" tests do not teach it, they bound it. Null for an edition that was not asked for. */
+    materialFor(versionId: number, coatId: number): PreparedMaterial | null {
       const sheet = sheets.get(versionId)
       if (!sheet) return null
       const prepared = preparedMaterials.prepare(sheet)
       const state = states.get(versionId)
       if (!state || state.tests.length === 0) return prepared
       const key = `${studioId} ${versionId} ${state.signature}`
-      return ownStands(own) ? learnedMaterial(`${key} ${coatId}`, prepared, state.tests.filter(test => test.coatId !== coatId)) : learnedMaterial(key, prepared, state.tests)
+      const lesson = lessonOf(state.tests, coatId)
+      return learnedMaterial(lesson.length < state.tests.length ? `${key} ${coatId}` : key, prepared, lesson)
     },
   }
 }

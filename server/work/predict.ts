@@ -49,7 +49,7 @@ export function predictFilms(db: Reader, studioId: number, pieceIds: readonly nu
   const clockOf = clocks(roomAirs(db, owner, since), airOf(owner), since)
   return coats.flatMap((row) => {
     const film = caseOf(row, facts)
-    const material = row.materialVersionId === null ? null : benches.materialFor(row.materialVersionId, row.id, film.tests ?? [])
+    const material = row.materialVersionId === null ? null : benches.materialFor(row.materialVersionId, row.id)
     return material ? [{ coat: row, prediction: predictCoat(material, film, spansOf(row, facts, clockOf), { now, hazeGapC: hazeGaps?.get(row.materialVersionId ?? 0) }) }] : []
   })
 }

@@ -51,3 +51,11 @@ export function benchTests(material: PreparedMaterial, coat: CoatCase, spans: re
     return [{ rung, coat: coatNumber, log: Math.log(minutes / material.rungs[rung]!.typical), reached, weight, extra: clockVariance + extra + stale + ground + (witness ? witnessVariance : 0) }]
   })
 }
+
+/**
+ * What teaches one coat of a bench: every test but its own "not yet", which bounds it already and would count twice. Its own "reached" stays in the lesson: taken out by
+ * a later "not yet", it would leave the bench evener than it was, its bands narrower, and a rung of this coat earlier for a film that was not ready.
+ */
+export function lessonOf<Test extends BenchTest>(tests: readonly Test[], coat: number): Test[] {
+  return tests.filter(test => test.coat !== coat || test.reached)
+}

@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { BenchTest } from '#shared/drying/learn'
 import { learnBench } from '#shared/drying/learn'
-import { fadeOf, weightOf } from '#shared/drying/bench-tests'
+import { fadeOf, lessonOf, weightOf } from '#shared/drying/bench-tests'
 import type { PreparedMaterial } from '#shared/drying/material'
 import { sheetScale } from '#shared/drying/doubt'
 import { density, normal } from '#shared/drying/normal'
@@ -196,6 +196,38 @@ describe('a "not yet" on another coat', () => {
     fc.assert(fc.property(tests, notYet, (given, told) => {
       for (let rung = 0; rung < 3; rung++) expect(learned([...given, told]).rungs[rung]!.shift).toBeGreaterThanOrEqual(learned(given).rungs[rung]!.shift - 1e-7)
     }), { numRuns: 60, seed: 7 })
+  })
+})
+
+describe('a coat in its own bench\'s lesson', () => {
+  const clock = roomClock(steadyRoom(20, 0.5, now), now, tools)
+  const spans = [{ clock, fromAt: now, toAt: null }]
+  /** The times of coat 1: bounded by its own tests, taught by what `lesson` leaves of all. In steady reference air its clock shows the minutes since it went on. */
+  const timesOf = (given: readonly BenchTest[], lesson: (tests: readonly BenchTest[], coat: number) => BenchTest[]) => {
+    const own = given.filter(test => test.coat === 1).map(({ rung, log, reached }) => ({ at: Math.round(now + sheet.rungs[rung]!.typical * Math.exp(log) * minuteMs), milestone: sheet.rungs[rung]!.name, reached }))
+    return predictCoat(learned(lesson(given, 1)), { ...coatAt(now), tests: own }, spans, { now }).milestones
+  }
+  const standing = fc.tuple(tests, fc.array(fc.record({ rung: fc.integer({ min: 0, max: 2 }), log: fc.double({ min: -4, max: 2, noNaN: true }) }), { minLength: 1, maxLength: 2 }))
+  const told = (given: readonly { rung: number, log: number }[]): BenchTest[] => given.map(each => ({ ...each, coat: 1, reached: false, weight: 1, extra: 0 }))
+  /** Worst move earlier of any time of coat 1 by its own "not yet", ms. */
+  const worst = (given: readonly BenchTest[], notYet: readonly BenchTest[], lesson: Parameters<typeof timesOf>[1]) => {
+    const before = timesOf(given, lesson)
+    return Math.min(...timesOf([...given, ...notYet], lesson).flatMap((after, k) => (['likelyAt', 'p90At', 'p98At'] as const).map(which => (after[which] ?? Infinity) - (before[k]![which] ?? Infinity)).filter(move => !Number.isNaN(move))))
+  }
+
+  it('is made no earlier by its own "not yet", whatever it answered before', () => {
+    fc.assert(fc.property(standing, ([given, notYet]) => {
+      expect(worst(given, told(notYet), lessonOf)).toBeGreaterThanOrEqual(0)
+    }), { numRuns: 80, seed: 8 })
+  })
+
+  it('would be made earlier if its own "reached" left the lesson with it', () => {
+    // Three even fellows at 1.2 x typical, and a rung of this coat reached at a third of its time, which speaks for scatter.
+    const given = [...[2, 3, 4].flatMap(coat => [test(0.1, false, { rung: 2, coat }), test(0.25, true, { rung: 2, coat })]), test(-1.2, true, { rung: 0, coat: 1 }), test(-1.2, true, { rung: 1, coat: 1 })]
+    const notYet = told([{ rung: 2, log: -4 }])
+    const withoutOwn = (all: readonly BenchTest[], coat: number) => all.some(each => each.coat === coat && !each.reached) ? all.filter(each => each.coat !== coat) : [...all]
+    expect(worst(given, notYet, withoutOwn)).toBeLessThan(0)
+    expect(worst(given, notYet, lessonOf)).toBe(0)
   })
 })
 

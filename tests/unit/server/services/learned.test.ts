@@ -1,4 +1,4 @@
-import { eq } from 'drizzle-orm'
+import { asc, eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
 import { benchSpeed, coat, materialVersion, prediction } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
@@ -56,6 +56,25 @@ describe('what the tests of one piece teach', () => {
     expect(learned().tests).toBe(1)
     expect(learned().rungs.find(each => each.name === milestone)!.tests[0]!.minutes).toBeGreaterThan(0)
     expect(learned().speed!.median).toBeGreaterThan(1)
+  })
+
+  it('makes nothing of a coat earlier by its own "not yet", whatever it had answered before', () => {
+    const { db, ids, tell, milestone, typical } = threeCovers()
+    const on = db.select().from(coat).where(eq(coat.pieceId, ids[0]!)).get()!
+    const rows = () => db.select().from(prediction).where(eq(prediction.coatId, on.id)).orderBy(asc(prediction.ordinal)).all()
+    const at = (share: number) => now + Math.round(share * typical)
+    // Two even fellows, and an early "reached" of the coat itself that speaks against it: taken out of the lesson again, it would leave the bench even and the band narrow.
+    for (const id of [ids[1]!, ids[2]!]) for (const [share, reached] of [[0.9, false], [1.1, true]] as const) tell('touch test', [id], at(share), { milestone, reached })
+    tell('touch test', [ids[0]!], at(0.2), { milestone: rows()[0]!.milestone, reached: true })
+    const before = rows()
+    expect(before[0]!.reachedAt).not.toBeNull()
+    // At a hundredth of its time a "not yet" is no news of the coat: what would move is the lesson alone.
+    tell('touch test', [ids[0]!], at(1.2) + minute, { milestone: before.at(-1)!.milestone, reached: false })
+    for (const [i, row] of rows().entries()) {
+      expect(row.likelyAt!).toBeGreaterThanOrEqual(before[i]!.likelyAt!)
+      expect(row.p90At!).toBeGreaterThanOrEqual(before[i]!.p90At!)
+      expect(row.p98At!).toBeGreaterThanOrEqual(before[i]!.p98At!)
+    }
   })
 
   it('takes no word of a helper: no keep-out is shortened by it', () => {
