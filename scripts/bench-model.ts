@@ -49,7 +49,7 @@ function main(args: readonly string[]): number {
   const chosen = worlds.filter(w => asked.includes(w.name))
   const cells = chosen.flatMap((world, w) => names.map((name, m) => {
     const material = materialOf(name)
-    return { world, material, name, result: runCell(world, material, learner, benches, seed + 1_000_003 * (w * names.length + m), tools) }
+    return { world, material, name, rooms: runCell(world, material, learner, benches, seed + 1_000_003 * (w * names.length + m), tools) }
   }))
   console.log(`learner: ${learner.name} (${learner.says}); ${benches} benches a cell; seed ${seed}`)
   for (const { name, says } of chosen) console.log(`world ${name}: ${says}`)

@@ -18,7 +18,7 @@ export interface Tally { times: number, early: number, none: number, likelier: n
 
 const tally = (): Tally => ({ times: 0, early: 0, none: 0, likelier: 0, ratio: 0 })
 
-/** What one world and one material gave: [checkpoint][rung] for tested and untested rungs, after 20 fully tested coats, and the errors of likely after 12. */
+/** What one world and one material gave in one room: [checkpoint][rung] for tested and untested rungs, after 20 fully tested coats, and the errors of likely after 12. */
 export interface CellResult {
   tested: Tally[][]
   untested: Tally[][]
@@ -36,7 +36,8 @@ interface Foretelling {
 }
 
 export const fullCoats = 20
-const roomsPerCell = 50
+/** Benches of one room go wrong together, on one cold night: many rooms say more than many benches in few. */
+const roomsPerCell = 200
 /** How long after a coat readings are still followed. */
 const followedMs = 10 * 86_400_000
 
@@ -58,7 +59,7 @@ function roomsOf(seed: number, tools: DryingTools): Foretelling[] {
   })
 }
 
-interface Run { sheet: PreparedMaterial, material: DryingMaterial, world: World, learner: Learner, result: CellResult }
+interface Run { sheet: PreparedMaterial, material: DryingMaterial, world: World, learner: Learner }
 
 function count(into: Tally, likelyAt: number | null, p90At: number | null, reachedAt: number, appliedAt: number) {
   if (likelyAt === null || p90At === null) {
@@ -91,7 +92,7 @@ function foretell({ sheet, material, learner }: Run, place: Foretelling, visits:
   return { due: due.map(d => d ?? { likelyAt: null, p90At: null }), reachedAt, coat, spans: [{ clock: place.room.known, fromAt: appliedAt, toAt: null }] }
 }
 
-function halfTested(run: Run, place: Foretelling, seed: number, parity: number) {
+function halfTested(run: Run, place: Foretelling, result: CellResult, seed: number, parity: number) {
   const chance = chanceOf(seed)
   const { milestones } = run.material
   const bench = run.world.bench(chance, milestones)
@@ -103,7 +104,7 @@ function halfTested(run: Run, place: Foretelling, seed: number, parity: number) 
     const appliedAt = place.calendar.foretold[c]!
     const { due, reachedAt, spans, coat } = foretell(run, place, visits, bench, appliedAt)
     for (const [k, { likelyAt, p90At }] of due.entries()) {
-      count((tested[k] ? run.result.tested : run.result.untested)[c]![k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
+      count((tested[k] ? result.tested : result.untested)[c]![k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
     }
     if (wanted !== 12) continue
     const middle = reachedIn(place.room, run.sheet, milestones, bench.middle(), appliedAt)
@@ -112,15 +113,15 @@ function halfTested(run: Run, place: Foretelling, seed: number, parity: number) 
     const miss = (at: number, k: number) => Math.abs(Math.log((at - appliedAt) / (middle[k]! - appliedAt)))
     for (const [k, { likelyAt }] of due.entries()) {
       if (!tested[k] || likelyAt === null) continue
-      run.result.errors.times++
-      run.result.errors.learner += miss(likelyAt, k)
-      run.result.errors.sheet += miss(instantOf(way, milestones[k]!.typical, k), k)
-      run.result.errors.mean += miss(instantOf(way, milestones[k]!.typical * factor, k), k)
+      result.errors.times++
+      result.errors.learner += miss(likelyAt, k)
+      result.errors.sheet += miss(instantOf(way, milestones[k]!.typical, k), k)
+      result.errors.mean += miss(instantOf(way, milestones[k]!.typical * factor, k), k)
     }
   }
 }
 
-function fullyTested(run: Run, place: Foretelling, seed: number) {
+function fullyTested(run: Run, place: Foretelling, result: CellResult, seed: number) {
   const chance = chanceOf(seed)
   const { milestones } = run.material
   const bench = run.world.bench(chance, milestones)
@@ -129,20 +130,23 @@ function fullyTested(run: Run, place: Foretelling, seed: number) {
   for (let coats = 0; coats < fullCoats; coats++) visits.push(...teach(chance, bench, place.room, run.sheet, milestones, every, coats, place.calendar.teaching[coats]!).visits)
   const appliedAt = place.calendar.foretold.at(-1)!
   const { due, reachedAt } = foretell(run, place, visits, bench, appliedAt)
-  for (const [k, { likelyAt, p90At }] of due.entries()) count(run.result.full[k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
+  for (const [k, { likelyAt, p90At }] of due.entries()) count(result.full[k]!, likelyAt, p90At, reachedAt[k]!, appliedAt)
 }
 
-/** Runs so many benches of a world on a material, half of whose rungs each bench tests, and as many that test all of them. Same seed, same numbers. */
-export function runCell(world: World, material: DryingMaterial, learner: Learner, benches: number, seed: number, tools: DryingTools): CellResult {
-  const rungs = material.milestones.length
+function emptyResult(rungs: number): CellResult {
   const grid = () => checkpoints.map(() => Array.from({ length: rungs }, tally))
-  const result: CellResult = { tested: grid(), untested: grid(), full: Array.from({ length: rungs }, tally), errors: { times: 0, learner: 0, sheet: 0, mean: 0 } }
-  const run = { sheet: readied(material, tools), material, world, learner, result }
-  const places = roomsOf(seed, tools)
-  for (let i = 0; i < benches; i++) {
-    const place = places[i % places.length]!
-    halfTested(run, place, seed + 104_729 * (i + 1), i % 2)
-    fullyTested(run, place, seed + 104_729 * (i + 1) + 1)
-  }
-  return result
+  return { tested: grid(), untested: grid(), full: Array.from({ length: rungs }, tally), errors: { times: 0, learner: 0, sheet: 0, mean: 0 } }
+}
+
+/** Runs so many benches of a world on a material, half of whose rungs each bench tests, and as many that test all of them: what they gave, room by room. Same seed, same numbers. */
+export function runCell(world: World, material: DryingMaterial, learner: Learner, benches: number, seed: number, tools: DryingTools): CellResult[] {
+  const run = { sheet: readied(material, tools), material, world, learner }
+  return roomsOf(seed, tools).map((place, r) => {
+    const result = emptyResult(material.milestones.length)
+    for (let i = r; i < benches; i += roomsPerCell) {
+      halfTested(run, place, result, seed + 104_729 * (i + 1), (i + Math.floor(i / roomsPerCell)) % 2)
+      fullyTested(run, place, result, seed + 104_729 * (i + 1) + 1)
+    }
+    return result
+  })
 }

@@ -8,7 +8,7 @@ import { nightShape } from '#shared/air/shape'
 import { checkpoints } from './benches'
 import { chanceOf } from './chance'
 import type { Cell } from './table'
-import { earlyShare } from './table'
+import { atCheckpoint, earlyShare } from './table'
 import type { World } from './worlds'
 
 const width = 640
@@ -30,7 +30,7 @@ export function earlyPicture(cells: readonly Cell[], worlds: readonly World[]): 
   for (const [i, coats] of checkpoints.entries()) inside.push(text(x(i), bottom + 20, String(coats), 'middle'))
   inside.push(text(width / 2, height - 6, 'coats of this bench, each rung tested once a coat by somebody who happened by', 'middle'))
   for (const [w, world] of worlds.entries()) {
-    const points = checkpoints.map((_, c) => `${x(c)},${y(earlyShare(cells.filter(cell => cell.world === world).flatMap(cell => cell.result.tested[c]!)))}`)
+    const points = checkpoints.map((_, c) => `${x(c)},${y(earlyShare(atCheckpoint(cells.filter(cell => cell.world === world), 'tested', c))?.share ?? 0)}`)
     inside.push(`<polyline points="${points.join(' ')}" fill="none" stroke="${ink}" stroke-width="2.5" stroke-dasharray="${lines[world.name] ?? ''}"/>`)
     inside.push(`<line x1="${left + 20 + w * 120}" x2="${left + 56 + w * 120}" y1="20" y2="20" stroke="${ink}" stroke-width="2.5" stroke-dasharray="${lines[world.name] ?? ''}"/>`, text(left + 62 + w * 120, 24, world.name))
   }
