@@ -1,6 +1,6 @@
 import { clearUserSession, getUserSession, replaceUserSession } from '#cookie-session'
 import { useRuntimeConfig } from 'nitropack/runtime'
-import { deleteCookie, getCookie, getQuery, getRouterParam, setCookie } from 'h3'
+import { getCookie, getQuery, getRouterParam, setCookie } from 'h3'
 import type { H3Event } from 'h3'
 import { nobody, readSession, readWallLink } from '~~/server/services/sessions'
 import type { Access } from '~~/server/services/sessions'
@@ -48,10 +48,6 @@ const benchSeconds = 400 * 24 * 60 * 60
 export function rememberBench(event: H3Event, token: string) {
   const { secure } = useRuntimeConfig(event).session.cookie as { secure: boolean }
   setCookie(event, benchCookie, token, { httpOnly: true, sameSite: 'lax', secure, path: '/', maxAge: benchSeconds })
-}
-
-export function forgetBench(event: H3Event) {
-  deleteCookie(event, benchCookie, { path: '/' })
 }
 
 /** The secret of the bench tablet that asks, or null. */

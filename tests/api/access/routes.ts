@@ -78,7 +78,6 @@ export const routes: Record<string, RouteCase> = {
   'bench/person.delete.ts': { least: 'bench', apart: 'none' },
   'bench/awake.post.ts': { least: 'bench', apart: 'none' },
   'bench/lock.post.ts': { least: 'bench', apart: 'none' },
-  'bench/leave.post.ts': { least: 'bench', apart: 'none' },
   'bench/acts/index.post.ts': { least: 'bench', apart: 'none', body: rows => ({ clientKey: clientKey(), kind: 'seen', doneAt: recently(), pieces: [{ id: rows.piece, version: 1 }], body: {}, memberId: null }) },
   'bench/acts/[id]/correct.post.ts': { least: 'bench', apart: 'none', at: 'act', body: () => ({ clientKey: clientKey(), takeBack: true }) },
   // The invented studio is nobody's of these until one of them adds it: then it is theirs to take away (tests/api/demo.test.ts).
