@@ -1,9 +1,11 @@
+import { wayCurrent } from '#shared/ways'
 import { shellWords } from '#shared/words/shell'
 
 export interface NavigationLink { to: string, label: string }
 
 /** The ways through the product: across the top from a tablet up; on a phone four in thumb reach, the rest under More. */
 export function useNavigation() {
+  const route = useRoute()
   const top: NavigationLink[] = [
     { to: '/board', label: shellWords.board },
     { to: '/hands', label: shellWords.hands },
@@ -26,5 +28,6 @@ export function useNavigation() {
     { to: '/start', label: shellWords.startBatch },
     ...top.filter(({ to }) => !thumb.some(link => link.to === to)),
   ]
-  return { top, thumb, more }
+  const currentOf = (link: NavigationLink) => wayCurrent(route.path, link.to)
+  return { top, thumb, more, currentOf }
 }
