@@ -20,6 +20,7 @@ export const benchWords = {
   list: 'What wants hands here',
   current: 'At hand',
   feel: (names: string) => `Feel ${names}`,
+  test: (milestone: string) => `Touch test: ${milestone}`,
   movedTitle: 'Where is it now?',
   empty: 'Nothing wants hands here now',
   emptySays: 'What is drying stands below with what may be handled.',
