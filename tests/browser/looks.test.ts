@@ -1,0 +1,91 @@
+import type { Browser } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
+import { startServer } from '../helpers/server'
+import type { TestServer } from '../helpers/server'
+import { firstStudio } from '../helpers/sign-in'
+import type { Visitor } from '../helpers/sign-in'
+import { roomOf } from '../api/access/rows'
+
+let server: TestServer
+let browser: Browser
+let owner: Visitor
+const phone = { width: 390, height: 844 }
+const pieces = ['Ferry cover 1', 'Ferry cover 2', 'Ferry cover 4, the tall one for the reading room', 'Ferry cover 3']
+
+beforeAll(async () => {
+  server = await startServer()
+  owner = await firstStudio(server.origin)
+  const room = (await owner.post<{ id: number }>('/api/rooms', roomOf('Bench'))).body.id
+  const shelf = (await owner.post<{ id: number }>('/api/places', { roomId: room, name: 'Shelf A', kind: 'shelf', capacity: 11, sort: 0 })).body.id
+  await owner.post('/api/batches', { clientKey: 'looks', name: 'Ferry covers', scheduleId: null, pieces, placeId: shelf, order: null, startsAt: new Date(Date.now() - 60_000).toISOString() })
+  browser = await openBrowser()
+})
+afterAll(async () => {
+  await browser.close()
+  await server.stop()
+})
+
+async function at(path: string, options: object) {
+  const { page } = await openPage(browser, server.origin, options, owner)
+  await visit(page, path)
+  return page
+}
+
+describe('what is drawn', () => {
+  it.each([390, 834])('keeps a label clear of the hand of its swatch at %i px', async (width) => {
+    const page = await at('/board', { viewport: { width, height: 1112 } })
+    await page.getByRole('heading', { name: 'Shelf A' }).waitFor()
+    const over = await page.locator('main li button').evaluateAll(keys => keys.map((key) => {
+      const [label, hand] = [key.querySelector('span.truncate'), [...key.querySelectorAll('svg')].find(svg => svg.classList.contains('h-9'))].map(each => each?.getBoundingClientRect())
+      return label && hand ? Math.max(0, Math.min(label.right, hand.right) - Math.max(label.left, hand.left)) * Math.max(0, Math.min(label.bottom, hand.bottom) - Math.max(label.top, hand.top)) : null
+    }))
+    expect(over.filter(each => each !== null)).toEqual(pieces.map(() => 0))
+    await page.context().close()
+  })
+
+  it('shows every free place where places are arranged, two places to a phone’s screen', async () => {
+    const page = await at('/arrange', { viewport: phone })
+    const place = page.locator('[data-place]')
+    await place.waitFor()
+    expect(await place.locator('.border-dashed').count()).toBe(11 - pieces.length)
+    expect((await place.boundingBox())!.height).toBeLessThan(280)
+    await page.context().close()
+  })
+})
+
+describe('the ways', () => {
+  it('are current also on the pages beneath them', async () => {
+    const wide = await at('/materials/new', { viewport: { width: 834, height: 1112 } })
+    expect(await wide.locator('header [aria-current]').evaluateAll(links => links.map(link => [link.textContent, link.getAttribute('aria-current')]))).toEqual([['Materials', 'true']])
+    await wide.context().close()
+    const narrow = await at('/settings/hours', { viewport: phone })
+    expect(await narrow.getByRole('button', { name: 'More' }).getAttribute('aria-current')).toBe('true')
+    await narrow.getByRole('button', { name: 'More' }).click()
+    expect(await narrow.getByRole('link', { name: 'Settings', exact: true }).getAttribute('aria-current')).toBe('true')
+    await narrow.context().close()
+  })
+
+  it('stand in one line on a tablet, none narrower than a thumb', async () => {
+    const page = await at('/board', { viewport: { width: 834, height: 1112 } })
+    const boxes = await page.locator('header nav a').evaluateAll(links => links.map(link => link.getBoundingClientRect()).map(({ width, height }) => [width >= 44, height >= 44 && height < 60]))
+    expect(boxes).toEqual(boxes.map(() => [true, true]))
+    await page.context().close()
+  })
+})
+
+describe('on a phone', () => {
+  it.each(['en-GB', 'en-US'])('working hours fit, as %s has its clock', async (locale) => {
+    const page = await at('/settings/hours', { viewport: phone, locale })
+    await page.getByRole('button', { name: 'Save' }).waitFor()
+    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBe(phone.width)
+    await page.context().close()
+  })
+  it('an address that leads nowhere says so', async () => {
+    const { page } = await openPage(browser, server.origin, { viewport: phone }, owner)
+    await page.goto(`${server.origin}/nowhere-at-all`)
+    await page.getByRole('heading', { name: 'There is nothing at this address.' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.context().close()
+  })
+})
