@@ -51,6 +51,9 @@ export async function useStudio(door: Door = {}, acting: Ref<Who | null> | null 
   useIntervalFn(() => store.failed && live.open.value && void store.load(door).catch(() => undefined), 2000)
 
   // Last, for after a wait nothing can be tied to the page any more: what was would never start, or never end.
-  await callOnce(`studio ${Object.values(door).join()}`, () => store.load(door), { mode: 'navigation' })
+  await callOnce(`studio ${Object.values(door).join()}`, () => store.load(door).catch((error: unknown) => {
+    // On the way from another page the page itself says that nothing came, and asks again; without it there would be none.
+    if (import.meta.server) throw error
+  }), { mode: 'navigation' })
   return { store, state: computed(() => store.state), pieces, now, zone, clock, heardAt, cutOff, who, reload: () => store.load(door) }
 }

@@ -81,6 +81,17 @@ describe('on a phone', () => {
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBe(phone.width)
     await page.context().close()
   })
+  it.each(['Pieces', 'Hands', 'Board'])('%s says so when the studio does not answer on the way to it', async (name) => {
+    const page = await at('/settings/hours', { viewport: phone })
+    await page.route('**/api/state*', route => route.fulfill({ status: 500, json: {} }))
+    if (name === 'Pieces') await page.getByRole('button', { name: 'More' }).click()
+    await page.getByRole('link', { name, exact: true }).filter({ visible: true }).click()
+    await page.getByRole('alert').filter({ hasText: 'Try again' }).waitFor()
+    await page.unroute('**/api/state*')
+    await page.getByRole('button', { name: 'Try again' }).click()
+    await page.getByText('Ferry cover').first().waitFor()
+    await page.context().close()
+  })
   it('an address that leads nowhere says so', async () => {
     const { page } = await openPage(browser, server.origin, { viewport: phone }, owner)
     await page.goto(`${server.origin}/nowhere-at-all`)
