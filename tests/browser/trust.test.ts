@@ -114,6 +114,8 @@ describe('the air ahead', () => {
     await visit(page, '/air')
     const shed = page.getByRole('region', { name: 'Shed' })
     await shed.getByText(/It lies in the shaded band eight times in ten/).waitFor()
+    await shed.getByText('Where these figures come from').click()
+    await shed.getByText(/^The last note was 20.*°C, 50 %/).waitFor()
     await shed.getByText('Figures as a table').click()
     await shed.getByRole('cell', { name: /°C, .* °C to .* °C/ }).first().waitFor()
     expect(await axeProblems(page)).toEqual([])
