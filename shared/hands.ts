@@ -20,7 +20,7 @@ export const sections = ['now', 'today', 'days', 'waiting'] as const
 export type Section = typeof sections[number]
 
 /** An instant (ms UTC) that goes for some of the pieces of a job. */
-export interface OfThem { at: number, some: number }
+interface OfThem { at: number, some: number }
 
 export interface JobPiece { read: ReadPiece, turn: ReadTurn }
 
