@@ -22,5 +22,15 @@ export function mostSooner({ batches }: Difference): BatchFare | null {
   return best && gainOf(best) >= noticed ? best : null
 }
 
+/** Four hours of lateness, in weighted minutes, or a batch that ends a day sooner, in ms, are the least that many steps are moved for (planning values). */
+const lateWorthMoving = 240
+const soonerWorthMoving = 24 * 60 * 60_000
+
+/** Whether a plan made anew buys enough to tell people other times: a window, a time at all, much less lateness, or a batch much sooner. */
+export function isWorthMoving(difference: Difference): boolean {
+  const sooner = mostSooner(difference)
+  return difference.windowsAfter < difference.windowsBefore || gainedTimes(difference).length > 0 || (lessLate(difference) ?? 0) >= lateWorthMoving || (sooner !== null && gainOf(sooner) >= soonerWorthMoving)
+}
+
 /** Whether a change buys anything worth saying. */
 export const isWorth = (difference: Difference): boolean => difference.windowsAfter < difference.windowsBefore || (lessLate(difference) ?? 0) >= 30 || mostSooner(difference) !== null || gainedTimes(difference).length > 0

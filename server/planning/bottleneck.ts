@@ -1,3 +1,4 @@
+import { anewOf } from '~~/server/planning/anew'
 import { copyFrom, differenceOf, orBefore } from '~~/server/planning/questions'
 import type { Ask, Base } from '~~/server/planning/questions'
 import { handsOf } from '~~/server/planning/hands'
@@ -54,7 +55,7 @@ export async function bottleneckOf(base: Base, now: number, ask: Ask): Promise<O
     if (!solved) continue
     more.push({ kind: each.kind, waitedMin: waited.find(one => one.for === (each.kind ?? 'hands'))?.minutes ?? dates.map(() => 0), difference: differenceOf(base, base.changed, orBefore(solved, base.plan)) })
   }
-  return { days: dates, waited, more: more.sort((a, b) => gain(b) - gain(a)) }
+  return { days: dates, waited, more: more.sort((a, b) => gain(b) - gain(a)), anew: await anewOf(base, ask) }
 }
 
 const aWeek = 7 * 24 * 60

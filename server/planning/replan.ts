@@ -1,3 +1,4 @@
+import { freely } from '~~/server/planning/anew'
 import { lastStartsOf } from '~~/server/planning/last-starts'
 import { movesOf } from '~~/server/planning/moves'
 import { missedWindows } from '~~/server/planning/missed-windows'
@@ -39,8 +40,9 @@ export type Replanned = { ok: true, planned: number } | { ok: false, reason: 'su
  * Plans a studio anew: windows that shut unused first get their recovery, then every open turn gets a start, then the
  * calls are brought in line. Every plan passes the independent check before it is stored.
  * @param now ms UTC
+ * @param anew whether what is neither pinned nor in hand may move for any gain
  */
-export async function replan(db: Database, studioId: number, now: number, solver: Solver = inWorker): Promise<Replanned> {
+export async function replan(db: Database, studioId: number, now: number, solver: Solver = inWorker, anew = false): Promise<Replanned> {
   missedWindows(db, studioId, now)
   const facts = readPlanFacts(db, studioId)
   if (!facts) return { ok: false, reason: 'no studio', message: `There is no studio ${studioId}.` }
@@ -53,7 +55,7 @@ export async function replan(db: Database, studioId: number, now: number, solver
   }
   const store = (plan: Plan) => keep(db, { facts, given, toCome }, plan, now)
   // A studio without a plan gets the first one at once; one with a plan sees only what is better.
-  const solved = await solver(String(studioId), given.problem, (first, broken) => {
+  const solved = await solver(String(studioId), anew ? freely(given.problem) : given.problem, (first, broken) => {
     if (facts.last.length === 0 && broken.length === 0) store(first)
   })
   if (!solved.ok) return { ok: false, reason: solved.reason === 'superseded' ? 'superseded' : 'not solved', message: solved.message }

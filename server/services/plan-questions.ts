@@ -30,7 +30,7 @@ function keptFor(db: Database, studioId: number, now: number, ask: Ask, bases: K
 /** What holds the plan in force back. Worked out once for each plan, on demand. `now` in ms UTC. */
 export async function bottleneck(db: Database, studioId: number, now: number, ask: Ask, bases: KeptBases = new Map()): Promise<BottleneckState | Refusal> {
   const found = keptFor(db, studioId, now, ask, bases)
-  if (isRefusal(found)) return { planMadeAt: null, days: [], waited: [], more: [], seen: [] }
+  if (isRefusal(found)) return { planMadeAt: null, anew: null, days: [], waited: [], more: [], seen: [] }
   found.kept.bottleneck ??= found.kept.base.then(async base => isRefusal(base) ? base : { ...await bottleneckOf(base, now, ask), planMadeAt: found.current.madeAt, seen: seenPlaces(db, studioId) })
   const answer = await found.kept.bottleneck
   // What did not come to an end is asked again.

@@ -33,5 +33,11 @@ export interface WhatIfAnswer { ok: true, difference: Difference, caution: strin
 /** One more of a resource, and what it would buy. `kind` null: one more pair of hands in the studio's hours. */
 export interface OneMore { kind: PlaceKind | null, waitedMin: number[], difference: Difference }
 
-/** GET /api/plan/bottleneck: what pieces wait for, day by day, and what one more of each would buy, the best first. */
-export interface BottleneckState { planMadeAt: number | null, days: string[], waited: { for: 'hands' | 'hours' | 'other' | PlaceKind, minutes: number[] }[], more: OneMore[], seen: { kind: PlaceKind, places: number, oldestAt: number | null }[] }
+/** What a plan made anew would buy, and how many steps would get another time for it. */
+export interface Anew { moves: number, difference: Difference }
+
+/**
+ * GET /api/plan/bottleneck: what pieces wait for, day by day, what one more of each would buy, the best first, and what a plan
+ * made anew would; `anew` null where that is not worth the moves.
+ */
+export interface BottleneckState { planMadeAt: number | null, anew: Anew | null, days: string[], waited: { for: 'hands' | 'hours' | 'other' | PlaceKind, minutes: number[] }[], more: OneMore[], seen: { kind: PlaceKind, places: number, oldestAt: number | null }[] }

@@ -69,24 +69,28 @@ function daysWaited({ waitedMin }: OneMore, days: readonly string[]): string {
   return named.length === 0 || named.length === days.length ? '' : ` on ${listText(named)}`
 }
 
-const countOf = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
+export const countOf = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
 
 /** "Clamps hold the plan back." with what pieces wait, what one more would buy, and for which batch. Only what was reckoned. */
 export function bottleneckSentence(state: BottleneckState, clock: Clock): { head: string, rest: string } {
   const first = state.more.find(each => isWorth(each.difference))
   if (!first) return { head: 'No single shortage holds the plan back.', rest: 'With one more of anything it would end much as it does: drying and hours set the pace.' }
   const { difference } = first
-  const less = lessLate(difference) ?? 0
   const waited = first.waitedMin.reduce((sum, each) => sum + each, 0)
   const wait = waited < 30 ? [] : [`Pieces that are ready wait ${longSpan(waited)} in all for ${first.kind === null ? 'hands' : 'them'}${daysWaited(first, state.days)}.`]
+  return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${gainsText(difference, clock)}.`].join(' ') }
+}
+
+/** "finish Box Friday 12:40 instead of Monday 9:00 and take 4 h off the lateness of all batches together": what a change would do. */
+export function gainsText(difference: Difference, clock: Clock): string {
+  const less = lessLate(difference) ?? 0
   const batch = mostSooner(difference)
-  const buys = [
+  return listText([
     ...batch?.beforeAt != null && batch.afterAt !== null ? [`finish ${batch.name} ${clockTime(batch.afterAt, clock)} instead of ${clockTime(batch.beforeAt, clock)}`] : [],
     ...gainedTimes(difference).length === 0 ? [] : [`give ${listText(gainedTimes(difference).map(each => each.name))} a time at all`],
     ...less >= 30 ? [`take ${longSpan(less)} off the lateness of all batches together`] : [],
     ...difference.windowsAfter < difference.windowsBefore ? [difference.windowsAfter === 0 ? 'let every window be kept' : `let ${countOf(difference.windowsBefore - difference.windowsAfter, 'more window')} be kept`] : [],
-  ]
-  return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${listText(buys)}.`].join(' ') }
+  ])
 }
 
 const aWeek = 7 * 86_400_000

@@ -130,6 +130,7 @@ export const routes: Record<string, RouteCase> = {
   'advice/index.get.ts': { least: 'helper', apart: 'view' },
   'advice/index.post.ts': { least: 'helper', apart: 'named', body: rows => ({ code: 'blush', answer: 'going on', coatIds: [rows.coat] }) },
   'plan/index.get.ts': { least: 'helper', apart: 'view' },
+  'plan/index.post.ts': { least: 'maker', apart: 'view' },
   // A time that has gone by: who may is told so.
   'pins/index.post.ts': { least: 'maker', apart: 'named', asLeast: 422, body: rows => ({ turnIds: [rows.turn], startsAt: recently(), memberId: null }) },
   'plan/bottleneck.get.ts': { least: 'helper', apart: 'view' },

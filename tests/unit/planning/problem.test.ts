@@ -62,10 +62,10 @@ describe('a plan', () => {
   const parts = { sessions: [], conflicts: [], bound: 0, seed: 1, schedules: 1, elapsed: 0 }
 
   it('works out its objective, part by part', () => {
-    // b ends at 19, 7 late at weight 2; it waited 4 after a's end; it moved from 10; weights 100, 0.1 and 30.
+    // b ends at 19, 7 late at weight 2; it waited 4 after a's end; it moved from 10; weights 100, 0.1 and 3000.
     const plan = makePlan(problem, { ...parts, entries: [entry('b', 14, 19), entry('a', 0, 10)] })
     expect(plan.objective).toEqual({ windowsMissed: 0, lateness: 14, setup: 0, waiting: 4, moves: 1, makespan: 19 })
-    expect(plan).toMatchObject({ status: 'feasible', cost: 1430.4, entries: [{ activity: 'a' }, { activity: 'b' }] })
+    expect(plan).toMatchObject({ status: 'feasible', cost: 4400.4, entries: [{ activity: 'a' }, { activity: 'b' }] })
   })
 
   it('refuses what does not hold together', () => {

@@ -1,5 +1,6 @@
+import { and, eq, sql } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { openHours, order, place, planEntry, reading, studio as studioTable } from '~~/db/schema'
+import { openHours, order, place, plan, planEntry, reading, studio as studioTable } from '~~/db/schema'
 import { withOnePlace } from '~~/server/planning/bottleneck'
 import { changedProblem } from '~~/server/planning/changed-facts'
 import { baseOf, copyFrom } from '~~/server/planning/questions'
@@ -9,6 +10,7 @@ import { solve } from '~~/server/planner/solve'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
 import { isRefusal } from '~~/server/utils/errors'
 import { studioZone } from '#shared/time'
+import { anewText } from '#shared/words/plan-anew'
 import { bottleneckSentence, differenceText } from '#shared/words/what-if'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
@@ -119,6 +121,26 @@ describe('what if', () => {
 })
 
 describe('a plan made anew', () => {
+  it('is offered where the last one costs much, is as good as it was said to be, and moves what it said', async () => {
+    const { db, studioId } = await oneBench()
+    // Everything stands five hours later than it need: of six boards through one bench none can come sooner alone.
+    db.update(planEntry).set({ startsAt: sql`${planEntry.startsAt} + ${5 * hour}`, endsAt: sql`${planEntry.endsAt} + ${5 * hour}` }).run()
+    const state = await bottleneck(db, studioId, now, ask)
+    if (isRefusal(state) || !state.anew) throw new Error('Nothing is offered.')
+    const { moves, difference } = state.anew
+    expect(anewText(state.anew, clock)).toMatch(new RegExp(`^The plan moves as little as it must. Made anew it would finish Boxs .* instead of .* and take .* off the lateness of all batches together; ${moves} steps would get another time. What is pinned or in hand stays.$`))
+    const stood = new Map(db.select().from(planEntry).all().map(entry => [entry.turnId, entry.startsAt]))
+    expect(await replan(db, studioId, now, (_key, problem) => Promise.resolve({ ok: true, plan: solve(problem, { schedules: 40 }), broken: [] }), true)).toMatchObject({ ok: true })
+    const stands = db.select().from(planEntry).innerJoin(plan, and(eq(plan.id, planEntry.planId), eq(plan.current, true))).all().map(row => row.plan_entry)
+    expect(stands.filter(entry => entry.startsAt !== stood.get(entry.turnId))).toHaveLength(moves)
+    expect(Math.max(...stands.map(entry => entry.endsAt))).toBe(difference.batches[0]?.afterAt)
+    // What it was offered for is had, so nothing is offered any more.
+    expect(await bottleneck(db, studioId, now, ask)).toMatchObject({ anew: null })
+  })
+  it('is not offered for a gain that is not worth the moves', async () => {
+    const { db, studioId } = await oneBench()
+    expect(await bottleneck(db, studioId, now, ask)).toMatchObject({ anew: null })
+  })
   it('is never worse than the last one repaired to the new facts', async () => {
     const studio = await oneBench()
     studio.batch('Lid', 3)

@@ -1,0 +1,16 @@
+import type { Anew } from '#shared/schemas/what-if'
+import type { Clock } from '#shared/time'
+import { countOf, gainsText } from '#shared/words/what-if'
+
+export const planAnewWords = {
+  make: 'Make the plan anew',
+  making: 'Making the plan anew',
+  made: 'The plan is made anew. What moved stands under the plan.',
+  changed: 'The studio changed while the plan was made. The plan follows by itself; then look again.',
+  notMade: 'The planner found no plan in time. The last one stays. Try again in a moment.',
+} as const
+
+/** "The plan moves as little as it must. Made anew it would ...; 36 steps would get another time. What is pinned or in hand stays." */
+export function anewText({ moves, difference }: Anew, clock: Clock): string {
+  return `The plan moves as little as it must. Made anew it would ${gainsText(difference, clock)}; ${countOf(moves, 'step')} would get another time. What is pinned or in hand stays.`
+}
