@@ -91,6 +91,27 @@ describe('the plan on Week', () => {
     expect(problems).toEqual([])
   })
 
+  it('keeps to its times, says what that costs, and is made anew when told to', async () => {
+    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
+    for (const pinId of new Set((await blocksOf()).flatMap(block => block.pinId ?? []))) expect((await owner.delete(`/api/pins/${pinId}`)).status).toBe(200)
+    await expect.poll(async () => (await blocksOf()).every(block => block.pinId === null), { timeout: 20_000 }).toBe(true)
+    const lastEnd = async () => Math.max(...(await blocksOf()).map(block => block.fromAt))
+    const [first, before] = [await firstWaiting(), await lastEnd()]
+    expect((await owner.post('/api/pins', { turnIds: first?.turnIds, startsAt: new Date((first?.workAt ?? 0) + 6 * 3_600_000).toISOString(), memberId: null })).status).toBe(200)
+    await expect.poll(lastEnd, { timeout: 20_000 }).toBeGreaterThanOrEqual(before + 5 * 3_600_000)
+    const pinId = (await blocksOf()).find(block => block.pinId !== null)?.pinId
+    expect((await owner.delete(`/api/pins/${pinId}`)).status).toBe(200)
+    await visit(page, '/week')
+    await page.getByText(/^The plan moves as little as it must\. Made anew it would .* steps would get another time\. What is pinned or in hand stays\.$/).waitFor({ timeout: 20_000 })
+    expect(await axeProblems(page)).toEqual([])
+    expect((await helper.post('/api/plan', {})).status).toBe(403)
+    await page.getByRole('button', { name: 'Make the plan anew' }).press('Enter')
+    await page.getByText('The plan is made anew.').waitFor({ timeout: 20_000 })
+    expect(await lastEnd()).toBeLessThan(before + 3_600_000)
+    await page.getByRole('button', { name: 'Make the plan anew' }).waitFor({ state: 'detached', timeout: 20_000 })
+    expect(problems).toEqual([])
+  })
+
   it('is a list on a phone', async () => {
     const { page, problems } = await openPage(browser, server.origin, {}, helper)
     await visit(page, '/week')
