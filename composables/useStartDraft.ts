@@ -29,12 +29,13 @@ export interface StartDraft {
   areaM2: number | null
   /** The day to promise with the start, ms UTC. */
   promiseAt: number | null
+  promiseTell: string
   /** What each piece is made of where no schedule says it. The lines of every shape that was looked at are kept. */
   shape: PartShape
   partRows: Partial<Record<PartShape, PartRow[]>>
 }
 
-const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null, promiseAt: null, shape: 'one', partRows: {} })
+const blank = (): StartDraft => ({ clientKey: '', scheduleId: null, name: '', count: 1, stem: '', names: {}, sizeUnits: 1, placeId: null, when: 'now', day: '', time: '', orderName: '', dueDay: '', dueTime: '', oldObject: false, areaM2: null, promiseAt: null, promiseTell: '', shape: 'one', partRows: {} })
 
 /** The lines of the form for the shape that is chosen. */
 export const partRowsOf = (draft: Pick<StartDraft, 'shape' | 'partRows'>): PartRow[] => draft.partRows[draft.shape] ?? rowsOf(draft.shape)

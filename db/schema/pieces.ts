@@ -14,6 +14,8 @@ export const order = sqliteTable('order', {
   name: text('name').notNull(),
   dueAt: instant('due_at'),
   promisedAt: instant('promised_at'),
+  /** Who is to hear of it when its date slips, and how; null: whoever ordered it. */
+  tell: text('tell'),
   weight: integer('weight').notNull().default(1),
   closedAt: instant('closed_at'),
 }, t => [studioKey(t), check('order_weight', sql`${t.weight} between 1 and 5`)])

@@ -18,7 +18,7 @@ export function slippingCalls(db: Database, studioId: number, now: number): Want
     if (row.promisedAt === null || watch.sinceAt === null) return []
     return [{
       kind: 'promise slipping', subjectType: 'order', subjectId: row.id, groupKey: `promise ${watch.promiseId} ${watch.slips}`, stage: 'slips', repeat: 0, dueAt: watch.sinceAt,
-      title: slipCall.title(row.name), body: slipCall.body(row.name, dateText(row.promisedAt, clock), dateText(watch.dateAt, clock), watch.cause, moved), path: '/week#batches',
+      title: slipCall.title(row.name), body: slipCall.body({ order: row.name, tell: row.tell, promised: dateText(row.promisedAt, clock), cautious: dateText(watch.dateAt, clock), cause: watch.cause, rescue: moved }), path: '/week#batches',
     }]
   })
 }

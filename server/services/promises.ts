@@ -62,7 +62,7 @@ export async function promiseState(db: Database, studioId: number, batchId: numb
   const made = left ? await estimatePlan(db, facts, now, luckOf(basis), search, { key: `batch ${batchId}`, batchIds: ids, ...asPlanned }) : null
   const found = made && estimateOf(made, facts, ids)
   return {
-    batchId, order: own.order?.name ?? null, batches: own.batches.map(each => each.name), dueAt: own.order?.dueAt ?? null,
+    batchId, order: own.order?.name ?? null, tell: own.order?.tell ?? null, batches: own.batches.map(each => each.name), dueAt: own.order?.dueAt ?? null,
     estimate: made && found ? dateEstimate(found, made, facts, basis) : null,
     why: found ? null : !left ? noDate.done : made && isStuck(made.given, facts, ids) ? noDate.stuck : noDate.unplanned,
     standing: own.order ? standingOf(db, studioId, own.order) : null,
@@ -105,6 +105,7 @@ export async function makePromise(db: Database, studioId: number, batchId: numbe
   const own = orderOf(db, studioId, batchId)
   if (!own) return absent()
   const dateAt = Date.parse(request.dateAt)
+  const tell = request.tell === '' ? null : request.tell
   if (dateAt <= now) return malformed({ dateAt: promiseRefusals.past }, promiseRefusals.past)
   if (dateAt > now + farthest) return malformed({ dateAt: promiseRefusals.far }, promiseRefusals.far)
   if (!own.order && request.orderName === undefined) return malformed({ orderName: promiseRefusals.noOrder }, promiseRefusals.noOrder)
@@ -116,11 +117,11 @@ export async function makePromise(db: Database, studioId: number, batchId: numbe
     const orderId = own.order?.id ?? orderNamed(tx, studioId, request.orderName ?? '')
     if (!own.order) tx.update(batch).set({ orderId }).where(owned(batch, studioId, batchId)).run()
     tx.insert(promise).values({ studioId, orderId, madeAt: now, likelyAt: estimate.likelyAt, dateAt, causes: estimate.causes }).run()
-    tx.update(order).set({ promisedAt: dateAt }).where(owned(order, studioId, orderId)).run()
+    tx.update(order).set({ promisedAt: dateAt, ...tell === undefined ? {} : { tell } }).where(owned(order, studioId, orderId)).run()
     // A new promise is watched from the beginning: what slipped before was another date.
     tx.delete(promiseWatch).where(scoped(promiseWatch, studioId, eq(promiseWatch.orderId, orderId))).run()
   })
-  return { ...state, order: own.order?.name ?? request.orderName ?? null, standing: { promisedAt: dateAt, madeAt: now, slipping: false, cause: null, cautiousAt: null, rescue: null } }
+  return { ...state, order: own.order?.name ?? request.orderName ?? null, tell: tell === undefined ? state.tell : tell, standing: { promisedAt: dateAt, madeAt: now, slipping: false, cause: null, cautiousAt: null, rescue: null } }
 }
 
 /** An open order of that name takes the batch in, as at the start of a batch. */

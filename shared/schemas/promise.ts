@@ -15,10 +15,11 @@ export const batchToCome = z.object({
 })
 export type BatchToComeRequest = z.infer<typeof batchToCome>
 
-/** A date given to somebody. The order's name is wanted where the batch belongs to none yet. */
+/** A date given to somebody. The order's name is wanted where the batch belongs to none yet. `tell`: who is to hear of a slip, and how; empty takes it back, left out leaves it. */
 export const promiseRequest = z.object({
   dateAt: instant,
   orderName: z.optional(z.string().check(z.trim(), z.minLength(1, batchFields.orderName), z.maxLength(60, batchFields.orderName))),
+  tell: z.optional(z.string(fields.tell).check(z.trim(), z.maxLength(120, fields.tell))),
 })
 export type PromiseRequest = z.infer<typeof promiseRequest>
 
@@ -55,6 +56,7 @@ export interface PromiseStanding { promisedAt: number, madeAt: number | null, sl
 export interface PromiseState {
   batchId: number
   order: string | null
+  tell: string | null
   batches: string[]
   dueAt: number | null
   estimate: DateEstimate | null

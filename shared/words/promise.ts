@@ -8,6 +8,7 @@ const greenwich = studioZone('UTC')
 
 /** What a field of a promise wants, said when it did not get it. */
 export const fields = {
+  tell: 'Say who is told, and how, in at most 120 characters.',
   schedule: 'Choose one of the studio’s finishing schedules: a date rests on its steps.',
   place: 'Choose the place where the pieces stand at first.',
   rework: 'Of ten coats 0 to 9 are done again.',
@@ -51,6 +52,8 @@ export const promiseWords = {
   shareHint: 'The rest goes on customers, errands and absence.',
   keep: 'Keep these figures',
   orderName: 'Whom it is promised to: name of the order',
+  tell: 'Who is told if it slips, and how',
+  tellHint: 'May stay empty. A name with a number or an address; only owners and makers read it.',
   chosen: (when: string) => `${when} is promised with the start of the batch.`,
   unchoose: 'Do not promise it',
   notKept: 'The batch has started, but its date was not kept. Promise it on the week’s page.',
@@ -131,9 +134,11 @@ export function pictureText({ days, scenarios, likelyAt, promiseAt }: DateEstima
 /** "Tue 8 Dec" of a local date. */
 export const dayText = (date: string) => dateText(Date.parse(`${date}T12:00:00Z`), { now: Date.parse(`${date}T12:00:00Z`), zone: greenwich })
 
+interface Slip { order: string, tell: string | null, promised: string, cautious: string, cause: PromiseCause | null, rescue: string | null }
+
 /** The call when a promised date is likely to pass. */
 export const slipCall = {
   title: (order: string) => `A promise slips: ${order}`,
-  body: (order: string, promised: string, cautious: string, cause: PromiseCause | null, rescue: string | null) =>
-    `${order} is promised for ${promised}; nine of ten ways now take till ${cautious}${cause ? `, most of it by ${causeText(cause)}` : ''}. Tell whoever ordered ${order}. ${rescueText(rescue)}`,
+  body: ({ order, tell, promised, cautious, cause, rescue }: Slip) =>
+    `${order} is promised for ${promised}; nine of ten ways now take till ${cautious}${cause ? `, most of it by ${causeText(cause)}` : ''}. Tell ${tell ?? `whoever ordered ${order}`}. ${rescueText(rescue)}`,
 } as const

@@ -10,7 +10,7 @@ import { changeBasis, readBasis } from '~~/server/services/promise-basis'
 import { makePromise, promiseForNew, promiseState } from '~~/server/services/promises'
 import { weekLoad } from '~~/server/services/week-load'
 import { studioZone } from '#shared/time'
-import { slipText } from '#shared/words/promise'
+import { slipCall, slipText } from '#shared/words/promise'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday.
@@ -100,6 +100,19 @@ describe('a promise', () => {
     expect(rows.map(row => row.dateAt)).toEqual([now + 9 * day, now + 12 * day])
     expect(rows[0]?.causes).toMatchObject({ drying: expect.any(Number), rework: expect.any(Number), hours: expect.any(Number) })
     expect(studio.db.select().from(order).get()?.promisedAt).toBe(now + 12 * day)
+  })
+
+  it('keeps who is told of a slip, till that is taken back', async () => {
+    const studio = await studioWith()
+    const { db, studioId, batchId } = studio
+    const giveAnd = (tell?: string) => makePromise(db, studioId, batchId, { dateAt: new Date(now + 9 * day).toISOString(), tell }, now, () => promiseState(db, studioId, batchId, now, searchHere))
+    expect(await giveAnd('Wren, 555 0100')).toMatchObject({ tell: 'Wren, 555 0100' })
+    expect(await giveAnd()).toMatchObject({ tell: 'Wren, 555 0100' })
+    expect(db.select().from(order).get()?.tell).toBe('Wren, 555 0100')
+    expect(await giveAnd('')).toMatchObject({ tell: null })
+    const slip = { order: 'Fair', promised: 'Friday', cautious: 'Monday', cause: null, rescue: null }
+    expect(slipCall.body({ ...slip, tell: 'Wren, 555 0100' })).toContain('Tell Wren, 555 0100.')
+    expect(slipCall.body({ ...slip, tell: null })).toContain('Tell whoever ordered Fair.')
   })
 
   it('is refused with a sentence for a day that is over, for nobody, and for another’s batch', async () => {
