@@ -53,7 +53,7 @@ export const promiseWords = {
   keep: 'Keep these figures',
   orderName: 'Whom it is promised to: name of the order',
   tell: 'Who is told if it slips, and how',
-  tellHint: 'May stay empty. A name with a number or an address; only owners and makers read it.',
+  tellHint: 'May stay empty. A name with a number or an address; it stands in the call that tells of the slip.',
   chosen: (when: string) => `${when} is promised with the start of the batch.`,
   unchoose: 'Do not promise it',
   notKept: 'The batch has started, but its date was not kept. Promise it on the week’s page.',
