@@ -29,6 +29,8 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
   const told = new Map(facts.lastChanges.map(change => [change.turnId, change]))
   const zone = studioZone(facts.owner.zone)
   const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
+  // Thousands of turns may have moved in a few plans.
+  const tills = new Map([...new Set(facts.lastChanges.flatMap(change => change.movedAt ?? []))].map(movedAt => [movedAt, toldTill(movedAt, hours, zone)]))
   const waiting = new Set(facts.turns.filter(turn => turn.status === 'waiting').map(turn => turn.id))
   for (const entry of made.entries) {
     const turnId = Number(entry.activity.slice(1))
@@ -41,7 +43,7 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
     const moved = isNoticed(heardAt, isAt, now)
     if (!moved) found.toldAt.set(turnId, heardAt)
     const earlier = told.get(turnId)
-    const fresh = earlier?.wasAt != null && earlier.movedAt !== null && now < toldTill(earlier.movedAt, hours, zone) ? { ...earlier, wasAt: earlier.wasAt, movedAt: earlier.movedAt } : null
+    const fresh = earlier?.wasAt != null && earlier.movedAt !== null && now < tills.get(earlier.movedAt)! ? { ...earlier, wasAt: earlier.wasAt, movedAt: earlier.movedAt } : null
     const wasAt = fresh?.wasAt ?? heardAt
     if (!isNoticed(wasAt, isAt, now)) continue
     if (moved) found.moves.push({ turnId, wasAt, isAt, movedAt: now, why: causes.of(turnId, heardAt, isAt) })

@@ -27,10 +27,13 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
     clashes: clashSentences(made, given), current: true,
   }).returning({ id: planTable.id }).get().id
   const roomOf = new Map(given.works.map(work => [familyOf(work), work.roomId]))
-  const sessionIds = made.sessions.map(session => tx.insert(planSession).values({
+  const setupOf = new Map(given.problem.families.map(family => [family.id, family.setup]))
+  const sessions = made.sessions.map(session => ({
     studioId, planId, family: session.family, roomId: roomOf.get(session.family) ?? null, startsAt: given.zeroAt + session.start * minute, endsAt: given.zeroAt + session.end * minute,
-    setupMin: given.problem.families.find(family => family.id === session.family)?.setup ?? 0,
-  }).returning({ id: planSession.id }).get().id)
+    setupMin: setupOf.get(session.family) ?? 0,
+  }))
+  // Numbers rise with the rows, whatever order the answer has.
+  const sessionIds = partsOf(sessions).flatMap(part => tx.insert(planSession).values(part).returning({ id: planSession.id }).all()).map(row => row.id).sort((a, b) => a - b)
   const due = silentStarts(facts, now)
   const rows = made.entries.map((entry): typeof planEntry.$inferInsert => {
     const turnId = Number(entry.activity.slice(1))
@@ -43,15 +46,13 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
       readyAt: moves.readyAt.get(turnId) ?? null, toldAt: moves.toldAt.get(turnId) ?? null,
     }
   })
-  inParts(rows, part => tx.insert(planEntry).values(part).run())
-  inParts(moves.moves.map(move => ({ studioId, planId, ...move })), part => tx.insert(planChange).values(part).run())
-  inParts(holdsOf(facts, rows, now).map(hold => ({ studioId, planId, ...hold })), part => tx.insert(planHold).values(part).run())
+  for (const part of partsOf(rows)) tx.insert(planEntry).values(part).run()
+  for (const part of partsOf(moves.moves)) tx.insert(planChange).values(part.map(move => ({ studioId, planId, ...move }))).run()
+  for (const part of partsOf(holdsOf(facts, rows, now))) tx.insert(planHold).values(part.map(hold => ({ studioId, planId, ...hold }))).run()
   return planId
 }
 
-function inParts<Row>(rows: readonly Row[], write: (part: Row[]) => void) {
-  for (let from = 0; from < rows.length; from += rowsAtOnce) write(rows.slice(from, from + rowsAtOnce))
-}
+const partsOf = <Row>(rows: readonly Row[]): Row[][] => Array.from({ length: Math.ceil(rows.length / rowsAtOnce) }, (_, part) => rows.slice(part * rowsAtOnce, (part + 1) * rowsAtOnce))
 
 /** Planned starts that have passed with nobody saying whether it went on: they stay due until somebody does. */
 function silentStarts(facts: PlanFacts, now: number): Map<number, number> {
