@@ -108,6 +108,42 @@ describe('a test by hand', () => {
   })
 })
 
+describe('what the tests have taught', () => {
+  it('stands with its material as bands and bounds, is forgotten and counted again', async () => {
+    await note(20, 0.5, 2)
+    const piece = await box('Taught box', 40)
+    await owner.post('/api/acts', { clientKey: key(), kind: 'touch test', doneAt: new Date(Date.now() - minute).toISOString(), pieces: [{ id: piece.id, version: (await pieceOf('Taught box'))?.version }], body: { milestone: 'dry-to-handle', reached: false } })
+    const materials = (await owner.get<{ id: number, name: string }[]>('/api/materials')).body
+    const taught = materials.find(each => each.name === 'Chalk-type paint')
+    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 390, height: 844 } }, owner)
+    await visit(page, `/materials/${taught?.id}`)
+    await page.getByRole('heading', { name: 'What your bench has taught' }).waitFor()
+    await page.getByText(/^Your bench: .* from \d+ touch tests?\.$/).waitFor()
+    await page.getByText(/^dry to handle\. Sheet: .* Your bench: .* Tests: .*not yet at \d+ min/).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByRole('button', { name: 'Forget the tests so far' }).click()
+    await page.getByRole('dialog').getByRole('button', { name: 'Forget the tests so far' }).click()
+    await page.getByText(/^Nobody has touch-tested it here yet/).waitFor()
+    await page.getByRole('button', { name: 'Count the earlier tests again' }).click()
+    await page.getByText(/^Your bench: .* from \d+ touch tests?\.$/).waitFor()
+    expect(problems).toEqual([])
+  })
+})
+
+describe('a note of the air', () => {
+  it('is taken back from the list of its room', async () => {
+    await note(26.5, 0.31, 1)
+    const { page } = await openPage(browser, server.origin, { viewport: { width: 834, height: 1112 } }, owner)
+    await visit(page, '/air')
+    const shed = page.getByRole('region', { name: 'Shed' })
+    await shed.getByText('Last notes').click()
+    await shed.getByRole('button', { name: /^Take it back: 26\.5 °C, 31 %/ }).click()
+    await shed.getByRole('button', { name: /^Take it back: 26\.5 °C, 31 %/ }).waitFor({ state: 'detached' })
+    const air = (await owner.get<{ name: string, last: { rh: number } }[]>('/api/air')).body
+    expect(air.find(room => room.name === 'Shed')?.last.rh).toBe(0.5)
+  })
+})
+
 describe('the air ahead', () => {
   it('is drawn dashed beyond now and stands in the table with its doubt', async () => {
     const { page } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
