@@ -94,7 +94,8 @@ export function roomTrack(room: RoomAir, tables: AirTables, zone: ZoneClock): Ro
   const readings = inOrder(room.readings)
   const measured: Measured[] = []
   for (const { at, tempC } of readings) if (tempC !== null) measured.push({ at, tempC })
-  const shape = hourPattern(measured, zone) ?? nightShape(room.heated ? 0 : room.nightDropC)
+  const night = nightShape(room.heated ? 0 : room.nightDropC)
+  const shape = hourPattern(measured, zone, night) ?? night
   const knownAt = measured.map(m => m.at)
   const knownC = measured.map(m => m.tempC)
   const temps = Float64Array.from(readings, r => r.tempC ?? tempOf(knownAt, knownC, lastBefore(knownAt, r.at), r.at, shape, zone, room.usual.tempC))

@@ -26,9 +26,10 @@ export interface Measured { at: number, tempC: number }
 
 /**
  * The room's own pattern: mean residual from the daily mean by local hour, empty hours interpolated around the clock, each hour's
- * mean standing at its half hour. Null until the readings cover three distinct local days.
+ * mean standing at its half hour. Null until the readings cover three distinct local days. Where over six hours on end were never read, the
+ * room falls there as by `night`: a shed that is read only by day is not as warm all night as it is in the evening.
  */
-export function hourPattern(readings: readonly Measured[], zone: ZoneClock): DayShape | null {
+export function hourPattern(readings: readonly Measured[], zone: ZoneClock, night: DayShape): DayShape | null {
   const days = new Map<number, { sum: number, count: number }>()
   for (const { at, tempC } of readings) {
     const key = localDay(zone, at)
@@ -47,17 +48,24 @@ export function hourPattern(readings: readonly Measured[], zone: ZoneClock): Day
     counts[hour] = counts[hour]! + 1
   }
   const known = [...counts.keys()].filter(hour => counts[hour]! > 0)
-  return Float64Array.from({ length: quartersADay + 1 }, (_, i) => aroundTheClock(known, h => sums[h]! / counts[h]!, i % quartersADay / 4 - 0.5))
+  return Float64Array.from({ length: quartersADay + 1 }, (_, i) => aroundTheClock(known, h => sums[h]! / counts[h]!, i % quartersADay / 4 - 0.5, night))
 }
 
-function aroundTheClock(known: readonly number[], value: (hour: number) => number, hour: number): number {
+/** So many hours on end that nobody ever read are not drawn straight. */
+const longUnreadHours = 6
+
+function aroundTheClock(known: readonly number[], value: (hour: number) => number, hour: number, night: DayShape): number {
   const first = known[0]!
   const last = known.at(-1)!
   const below = known.findLast(h => h <= hour) ?? last
   const above = known.find(h => h > hour) ?? first
   const span = (above - below + 24) % 24
   if (span === 0) return value(below)
-  return value(below) + (value(above) - value(below)) * (((hour - below + 24) % 24) / span)
+  const share = ((hour - below + 24) % 24) / span
+  const straight = value(below) + (value(above) - value(below)) * share
+  if (span <= longUnreadHours) return straight
+  const drop = (h: number) => shapeAt(night, (h + 24.5) % 24 * 3_600_000)
+  return straight + drop(hour) - drop(below) - (drop(above) - drop(below)) * share
 }
 
 /** The shape at a local time of day in ms, linear between quarters. */

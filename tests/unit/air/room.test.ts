@@ -101,8 +101,20 @@ describe('the room\'s own pattern', () => {
   it('waits for the third day', () => {
     const zone = zoneClock('UTC', 0, dayMs)
     const measured = days.map(({ at: t, tempC }) => ({ at: t, tempC: tempC ?? 0 }))
-    expect(hourPattern(measured.slice(0, 6), zone)).toBeNull()
-    expect(hourPattern(measured.slice(0, 7), zone)).not.toBeNull()
+    expect(hourPattern(measured.slice(0, 6), zone, nightShape(0))).toBeNull()
+    expect(hourPattern(measured.slice(0, 7), zone, nightShape(0))).not.toBeNull()
+  })
+
+  it('falls by the night drop where an unheated room was never read, and not where it was', () => {
+    // Read at 10:30 and 17:30 on three days, 15 C and 19 C: 17 h unread. At 05:30, 12 of them gone, straight from 19 to 15 is 19 - 4 x 12/17 = 16.18.
+    // The night's own shape: -4 (1 - cos(pi 11.5/12))/2 = -3.983 there, 0 at either end.
+    const byDay = ['01', '02', '03'].flatMap(d => [read(`2026-03-${d}T10:30:00Z`, 15, 0.5), read(`2026-03-${d}T17:30:00Z`, 19, 0.5)])
+    expect(air(roomWith({ heated: false, nightDropC: 4, readings: byDay }), '2026-03-04T05:30:00Z').tempC).toBeCloseTo(16.176 - 3.983, 2)
+    expect(air(roomWith({ heated: true, nightDropC: 0, readings: byDay }), '2026-03-04T05:30:00Z').tempC).toBeCloseTo(16.176, 2)
+    // With a reading at 23:30 and one at 05:30 no six hours are left unread, and what was read counts: 12 C at 05:30.
+    const byNight = [...byDay, ...['01', '02', '03'].flatMap(d => [read(`2026-03-${d}T23:30:00Z`, 14, 0.5), read(`2026-03-${d}T05:30:00Z`, 12, 0.5)])]
+    expect(air(roomWith({ heated: false, nightDropC: 4, readings: byNight }), '2026-03-04T05:30:00Z').tempC).toBeCloseTo(12, 9)
+    expect(air(roomWith({ heated: false, nightDropC: 4, readings: byNight }), '2026-03-04T02:30:00Z').tempC).toBeCloseTo(13, 9)
   })
 
   it('gives a reading by a word its temperature', () => {

@@ -66,6 +66,12 @@ describe('the night ahead', () => {
     expect(advised([...days, read('2026-03-10T17:00:00Z', 14, 0.5)]).map(a => a.code)).toContain('cold-before-strength')
   })
 
+  it('does not forget the night of a shed that was read on many days, but never at night', () => {
+    const byDay = [7, 8, 9].flatMap(day => [['11', 12], ['17', 11]].map(([hour, tempC]) => read(`2026-03-0${day}T${hour}:00:00Z`, Number(tempC), 0.5)))
+    expect(advised([...byDay, read('2026-03-10T17:00:00Z', 11, 0.5)]).map(a => a.code)).toContain('cold-before-strength')
+    expect(advised([...byDay, read('2026-03-10T17:00:00Z', 11, 0.5)], { heated: true, nightDropC: 0 }).map(a => a.code)).not.toContain('cold-before-strength')
+  })
+
   it('a panel in the yard is to be brought in by a time', () => {
     const slow = materialWith({ minTempC: null, milestones: [rung('dry-to-handle', 'oxidation', 1000, 2000, 4000)] })
     // 14 C at 75 % has its dew point at 9.6 C: 3 degrees above it is 12.6, which a night drop of 6 passes in the evening.
