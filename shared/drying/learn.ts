@@ -21,12 +21,13 @@ export interface BenchTest {
 
 /**
  * How a sheet's doubt may be divided, on the scale of its own band (1 is its sd): `bench` is the same for every coat here, `coat` is each
- * coat's own. An even bench that the sheet misjudges; one whose coats scatter as the sheet says; one half-way. Each adds up to the
- * sheet's own band, so that only evidence over several coats chooses. The two readings of a sheet weigh the same, what lies between them a tenth.
+ * coat's own. An even bench that the sheet misjudges; one on its sheet, or nearly, whose coats scatter as the sheet says; one half-way. Each adds up to
+ * the sheet's own band, so that only evidence over several coats chooses. A sheet speaks for many shops, so its band is more often between benches than between the
+ * coats of one: two to one before anything is told; what lies between them a tenth.
  */
 const divisions = [
-  { bench: Math.sqrt(0.97), coat: Math.sqrt(0.03), weight: 0.45 },
-  { bench: 0, coat: 1, weight: 0.45 },
+  { bench: Math.sqrt(0.97), coat: Math.sqrt(0.03), weight: 0.6 },
+  { bench: Math.sqrt(0.05), coat: Math.sqrt(0.95), weight: 0.3 },
   { bench: Math.sqrt(0.5), coat: Math.sqrt(0.5), weight: 0.1 },
 ] as const
 
@@ -53,7 +54,6 @@ function answerLog({ log, reached, weight, extra }: BenchTest, { middle, late, e
 
 /** Adds to `logs`, along the grid, what tests of one rung say of its offset under one division. */
 function told(logs: Float64Array, tests: readonly BenchTest[], scale: SheetScale, { bench, coat }: typeof divisions[number]): Float64Array {
-  if (bench === 0) return logs
   return logs.map((log, i) => tests.reduce((sum, each) => sum + answerLog(each, scale, bench * grid[i]!, coat * coat), log))
 }
 
@@ -85,14 +85,14 @@ const benchEvidence = (rungs: readonly Float64Array[]) => eitherOr(weighedOut(ru
 const scores = Array.from({ length: 33 }, (_, i) => (i - 16) / 4)
 const scoreWeights = scores.map(e => Math.exp(-e * e / 2) / 4 / Math.sqrt(2 * Math.PI))
 
-/** ln of the evidence where the bench is on the sheet and its coats differ by `coat`: by one score in all a coat's tests, or test by test, as likely as not. */
-function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], coat: number): number {
-  const own = Math.sqrt(coat * coat - rungVariance)
+/** ln of the evidence where coats differ by the sheet's whole band, what little of it is the bench's counted with theirs: by one score in all a coat's tests, or test by test, as likely as not. */
+function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[]): number {
+  const own = Math.sqrt(1 - rungVariance)
   const coats = new Map<number, BenchTest[]>()
   for (const each of tests) coats.set(each.coat, [...coats.get(each.coat) ?? [], each])
   const together = [...coats.values()].reduce((sum, of) => sum + Math.log(scores.reduce((all, e, i) =>
     all + scoreWeights[i]! * Math.exp(of.reduce((log, each) => log + answerLog(each, scales[each.rung]!, own * e, rungVariance), 0)), 0)), 0)
-  return eitherOr(together, tests.reduce((sum, each) => sum + answerLog(each, scales[each.rung]!, 0, coat * coat), 0))
+  return eitherOr(together, tests.reduce((sum, each) => sum + answerLog(each, scales[each.rung]!, 0, 1), 0))
 }
 
 /**
@@ -100,7 +100,7 @@ function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale 
  * each division weighs both. Counted test by test alone, a coat tested on five rungs would speak five times.
  */
 function weighed(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], rungs: readonly (readonly Float64Array[])[]): number[] {
-  const logs = divisions.map(({ bench, coat, weight }, d) => Math.log(weight) + (bench === 0 ? coatEvidence(tests, scales, coat) : benchEvidence(rungs.map(own => own[d]!))))
+  const logs = divisions.map(({ bench, coat, weight }, d) => Math.log(weight) + (bench < coat ? coatEvidence(tests, scales) : benchEvidence(rungs.map(own => own[d]!))))
   const best = Math.max(...logs)
   const raw = logs.map(log => Math.exp(log - best))
   const all = raw.reduce((sum, w) => sum + w, 0)
@@ -138,9 +138,7 @@ const leastChance = 1e-12
 
 /** A rung's scores: every offset of every division, with what its coats add. */
 function mixed(own: readonly Posterior[], weights: readonly number[]): Mixture {
-  return divisions.flatMap(({ bench, coat }, d) => (bench === 0
-    ? [{ weight: weights[d]!, mean: 0, variance: coat * coat }]
-    : Array.from(own[d]!.chances, (p, i) => ({ weight: weights[d]! * p, mean: bench * grid[i]!, variance: coat * coat })).filter(part => part.weight > leastChance)))
+  return divisions.flatMap(({ bench, coat }, d) => Array.from(own[d]!.chances, (p, i) => ({ weight: weights[d]! * p, mean: bench * grid[i]!, variance: coat * coat })).filter(part => part.weight > leastChance))
 }
 
 /**

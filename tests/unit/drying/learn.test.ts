@@ -57,13 +57,13 @@ describe('what a bench learns from its tests', () => {
 
   it('agrees with the closed form after one bound at the sheet\'s middle', () => {
     // Offset u ~ N(0, 1), next to it a coat of variance 1 - b²: given "not yet" at the middle the mean of u is b x 2 phi(0) = 0.79788 b.
-    // Three answers in a hundred say nothing: 0.97 of that. The bench's part is b u: b² = 0.97 for the even bench, 0.5 for the one half-way.
+    // Three answers in a hundred say nothing: 0.97 of that. The bench's part is b u: b² = 0.97 for the even bench, 0.05 for the one on its sheet, 0.5 for the one half-way.
     const given = [test(q(sheet, 1, 1), false)]
     expect(division(given, 0.03).mean).toBeCloseTo(0.97 * 0.79788 * 0.97, 3)
     expect(division(given, 0.5).mean).toBeCloseTo(0.5 * 0.79788 * 0.97, 3)
-    // The second division has no offset to learn, and one bound tells none from another: the weights stay as they were.
-    expect(division(given, 1).mean).toBeCloseTo(0, 9)
-    expect(division(given, 0.03).weight).toBeCloseTo(0.45, 6)
+    expect(division(given, 0.95).mean).toBeCloseTo(0.05 * 0.79788 * 0.97, 3)
+    // One bound tells none from another: the weights stay as they were.
+    expect(division(given, 0.03).weight).toBeCloseTo(0.6, 6)
   })
 
   it.each([-1, -0.4, 0.7, 1.2])('agrees with the closed form after one bound at %f of the band', (a) => {
@@ -78,10 +78,10 @@ describe('what a bench learns from its tests', () => {
   it('weighs the divisions by the closed form when two coats disagree at the sheet\'s middle', () => {
     // Two scores of correlation r lie on different sides of their middle with chance 1/4 - asin(r) / 2 pi, in a given order; an answer says something 97 times in a hundred.
     const disagree = (r: number) => 0.97 ** 2 * (0.25 - Math.asin(r) / (2 * Math.PI)) + (1 - 0.97 ** 2) / 4
-    const raw = [0.45 * disagree(0.97), 0.45 * disagree(0), 0.1 * disagree(0.5)]
+    const raw = [0.6 * disagree(0.97), 0.3 * disagree(0), 0.1 * disagree(0.5)]
     const sum = raw.reduce((all, each) => all + each, 0)
     const given = [test(q(sheet, 1, 1), false), test(q(sheet, 1, 1), true)]
-    for (const [d, variance] of [0.03, 1, 0.5].entries()) expect(division(given, variance).weight).toBeCloseTo(raw[d]! / sum, 2)
+    for (const [d, variance] of [0.03, 0.95, 0.5].entries()) expect(division(given, variance).weight).toBeCloseTo(raw[d]! / sum, 2)
   })
 
   it('says what the sheet says, at every chance and doubt, while its tests say nothing', () => {
