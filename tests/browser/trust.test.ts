@@ -101,7 +101,7 @@ describe('a test by hand', () => {
     expect((await owner.post('/api/witnesses', { actId })).status).toBe(200)
     await visit(page, `/pieces/${piece.id}`)
     const board = page.getByRole('listitem').filter({ hasText: /^Witness board \d/ }).first()
-    await board.getByText(/beside first paint on the lid top, Witnessed box/i).waitFor()
+    await board.getByText(/beside “First paint on the lid top”, Witnessed box/).waitFor()
     expect(await axeProblems(page)).toEqual([])
     await board.getByRole('button', { name: 'Still tacky' }).click()
     await told(page).getByText(/Tested: not yet/).waitFor()
