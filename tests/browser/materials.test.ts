@@ -131,7 +131,7 @@ describe('a starter material', () => {
     await page.getByRole('button', { name: 'Save as a new edition' }).click()
     await page.getByRole('heading', { level: 1, name: 'Shellac' }).waitFor()
     await page.getByText(/ready to recoat: 1 h.*was 45 min/).waitFor()
-    await page.getByText('the studio’s own figure (the studio’s own)').waitFor()
+    await page.getByText('the studio’s own figure', { exact: true }).first().waitFor()
     await page.getByRole('button', { name: 'Go back to edition 1' }).click()
     await page.getByRole('button', { name: 'Go back', exact: true }).click()
     await page.getByText('Back to edition 1', { exact: true }).first().waitFor()

@@ -89,7 +89,7 @@ describe('a schedule made by keyboard only', () => {
     // Taken out and taken back.
     await press(page, key(page, 'Take out: Acrylic gesso'))
     await expect.poll(() => steps(page).count()).toBe(1)
-    await press(page, key(page, /^Undo: acrylic gesso taken out/))
+    await press(page, key(page, 'Undo: “Acrylic gesso” taken out'))
     await expect.poll(() => steps(page).count()).toBe(2)
     expect(await axeProblems(page)).toEqual([])
 
