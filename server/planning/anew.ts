@@ -10,11 +10,10 @@ const nextToNothing = 1
 /** The problem of a plan made anew: what is neither pinned nor in hand moves for any gain. */
 export const freely = (problem: PlanProblem): PlanProblem => ({ ...problem, weights: { ...problem.weights, moves: nextToNothing } })
 
-/** What a plan made anew would buy against the last plan on the facts of now; null where it is not worth the moves, or no answer came in time. */
+/** What a plan made anew would buy against what the next plan will be, held to its times and searched as long; null where it is not worth the moves, or no answer came in time. */
 export async function anewOf(base: Base, ask: Ask): Promise<Anew | null> {
   const { problem } = base.changed.given
-  // The first that a search makes is the last plan, repaired.
-  const kept = await ask(problem, 1)
+  const kept = await ask(problem)
   const plan = kept && await ask(freely(problem))
   if (!plan) return null
   const difference = differenceOf({ ...base, plan: kept }, base.changed, plan)

@@ -52,7 +52,8 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     jobs: jobsOf(planned, facts, zeroAt),
     fixed,
     horizon: horizonDays * 24 * 60,
-    previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
+    // A start that nobody has heard of may move for nothing.
+    previous: Object.fromEntries(facts.last.filter(entry => entry.toldAt !== null && entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
   }
   return { problem: planProblem(input), zeroAt, works: planned, hands, untested: new Set(found.flatMap(each => [...each.untested])), leftOut: [...leftOut], films: asked.map(lag => lag.film ?? null) }
 }

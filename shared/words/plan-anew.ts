@@ -1,5 +1,4 @@
 import type { Anew } from '#shared/schemas/what-if'
-import type { Clock } from '#shared/time'
 import { countOf, gainsText } from '#shared/words/what-if'
 
 export const planAnewWords = {
@@ -11,6 +10,6 @@ export const planAnewWords = {
 } as const
 
 /** "The plan moves as little as it must. Made anew it would ...; 36 steps would get another time. What is pinned or in hand stays." */
-export function anewText({ moves, difference }: Anew, clock: Clock): string {
-  return `The plan moves as little as it must. Made anew it would ${gainsText(difference, clock)}; ${countOf(moves, 'step')} would get another time. What is pinned or in hand stays.`
+export function anewText({ moves, difference }: Anew): string {
+  return `The plan moves as little as it must. Made anew it would ${gainsText(difference)}; ${countOf(moves, 'step')} would get another time. What is pinned or in hand stays.`
 }

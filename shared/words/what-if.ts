@@ -1,15 +1,14 @@
 import { gainOf, gainedTimes, isNoticeable, isWorth, lessLate, mostSooner } from '#shared/what-if'
 import type { BatchFare, BottleneckState, Difference, OneMore } from '#shared/schemas/what-if'
 import type { PlaceKind } from '#shared/terms'
-import { ago, clockTime } from '#shared/time'
-import type { Clock } from '#shared/time'
+import { ago } from '#shared/time'
 import { listText } from '#shared/words/group'
 import { longSpan } from '#shared/words/plan-strips'
 import { placeKindsText, weekdayOfDate } from '#shared/words/week'
 
 export const whatIfWords = {
   title: 'What would change it',
-  hint: 'Tried on a copy of the plan. Nothing is kept unless you say so.',
+  hint: 'Both are copies of the plan, made anew: its moves cost nothing there. Nothing is kept unless you say so.',
   ask: 'Try it',
   asking: 'Trying it on a copy',
   what: 'What to try',
@@ -27,7 +26,7 @@ export const whatIfWords = {
   day: 'New date',
   time: 'Time',
   batchColumn: 'Batch',
-  before: 'As it is',
+  before: 'Made anew without it',
   after: 'With it',
   difference: 'Difference',
   noTime: 'no time',
@@ -72,21 +71,24 @@ function daysWaited({ waitedMin }: OneMore, days: readonly string[]): string {
 export const countOf = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
 
 /** "Clamps hold the plan back." with what pieces wait, what one more would buy, and for which batch. Only what was reckoned. */
-export function bottleneckSentence(state: BottleneckState, clock: Clock): { head: string, rest: string } {
+export function bottleneckSentence(state: BottleneckState): { head: string, rest: string } {
   const first = state.more.find(each => isWorth(each.difference))
   if (!first) return { head: 'No single shortage holds the plan back.', rest: 'With one more of anything it would end much as it does: drying and hours set the pace.' }
   const { difference } = first
   const waited = first.waitedMin.reduce((sum, each) => sum + each, 0)
   const wait = waited < 30 ? [] : [`Pieces that are ready wait ${longSpan(waited)} in all for ${first.kind === null ? 'hands' : 'them'}${daysWaited(first, state.days)}.`]
-  return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${gainsText(difference, clock)}.`].join(' ') }
+  return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${gainsText(difference)}.`].join(' ') }
 }
 
-/** "finish Box Friday 12:40 instead of Monday 9:00 and take 4 h off the lateness of all batches together": what a change would do. */
-export function gainsText(difference: Difference, clock: Clock): string {
+/**
+ * "finish Box 3 days sooner and take 4 h off the lateness of all batches together": what a change would do. Never the hours themselves: both
+ * plans are copies, and neither need end when the plan in force does.
+ */
+export function gainsText(difference: Difference): string {
   const less = lessLate(difference) ?? 0
   const batch = mostSooner(difference)
   return listText([
-    ...batch?.beforeAt != null && batch.afterAt !== null ? [`finish ${batch.name} ${clockTime(batch.afterAt, clock)} instead of ${clockTime(batch.beforeAt, clock)}`] : [],
+    ...batch ? [`finish ${batch.name} ${longSpan(gainOf(batch) / 60_000)} sooner`] : [],
     ...gainedTimes(difference).length === 0 ? [] : [`give ${listText(gainedTimes(difference).map(each => each.name))} a time at all`],
     ...less >= 30 ? [`take ${longSpan(less)} off the lateness of all batches together`] : [],
     ...difference.windowsAfter < difference.windowsBefore ? [difference.windowsAfter === 0 ? 'let every window be kept' : `let ${countOf(difference.windowsBefore - difference.windowsAfter, 'more window')} be kept`] : [],

@@ -46,7 +46,7 @@ describe('a new edition', () => {
     expect(after.rungs.find(each => each.name === 'ready-to-recoat')).toMatchObject({ typical: 180, low: 120, high: 240, key: 'own' })
     expect(after.rungs.find(each => each.name === 'set-to-touch')).toMatchObject({ typical: 35, source: 'our bench book', key: 'S' })
     expect(after.rungs.find(each => each.name === 'dry-to-handle')).toEqual(before.rungs.find(each => each.name === 'dry-to-handle'))
-    expect(editionChanges(before, after, 'metric')).toEqual(['set to touch: 35 min, between 16 min and 1 h 2 min, was 28 min, between 16 min and 1 h 2 min.', 'ready to recoat: 3 h, between 2 h and 4 h, was 2.8 h, between 2 h and 4 h.'])
+    expect(editionChanges(before, after, 'metric')).toEqual(['set to touch: 35 min, between 16 min and 1 h 2 min, was 28 min, between 16 min and 1 h 2 min.', 'ready to recoat: 3 h, between 2 and 4 h, was 2.8 h, between 2 and 4 h.'])
   })
 
   it('refuses what cannot be, by field', () => {

@@ -49,7 +49,7 @@ describe('pinning', () => {
     expect(await pinAt(studio, [lid ?? 0], now - hour)).toMatchObject({ ok: false, reason: 'impossible', message: 'That time has gone by. The next that can be given is 10:00.' })
     expect(await pinAt(studio, [lid ?? 0], Date.parse('2026-04-07T20:00:00Z'))).toMatchObject({ message: 'Nobody who may do “First paint on the lid top” works for so long then.' })
     // The first paint ends at the soonest at 10:06 and then dries: eleven is too soon to turn the lid.
-    expect(await pinAt(studio, [turnLid ?? 0], now + hour)).toMatchObject({ message: expect.stringMatching(/^“Turn the lid over onto points” cannot begin before .*: first paint on the lid top comes first\.$/) })
+    expect(await pinAt(studio, [turnLid ?? 0], now + hour)).toMatchObject({ message: expect.stringMatching(/^“Turn the lid over onto points” cannot begin before .*: “First paint on the lid top” comes first\.$/) })
     expect(studio.db.select().from(pin).all()).toEqual([])
   })
 
@@ -59,7 +59,7 @@ describe('pinning', () => {
     const at = Date.parse('2026-04-08T11:00:00Z')
     expect(await pinAt(studio, lids.slice(0, 1), at, studio.members.maker.id)).toEqual({ ok: true })
     // Six minutes from eleven are taken; at 11:03 the maker is still at it, at 11:06 no more.
-    expect(await pinAt(studio, lids.slice(1), at + 3 * minute, studio.members.maker.id)).toMatchObject({ message: 'The maker has first paint on the lid top then, which stays where it is.' })
+    expect(await pinAt(studio, lids.slice(1), at + 3 * minute, studio.members.maker.id)).toMatchObject({ message: 'The maker has “First paint on the lid top” then, which stays where it is.' })
     expect(await pinAt(studio, lids.slice(1), at + 6 * minute, studio.members.maker.id)).toEqual({ ok: true })
     studio.tell('began', now, 'glue-box', studio.pieceIds.slice(0, 1))
     expect(await pinAt(studio, turnsOf(studio, 'glue-box'), at)).toMatchObject({ ok: false, reason: 'conflict', message: 'It has been begun: work in hand stays where it is.' })
@@ -79,7 +79,7 @@ describe('pinning', () => {
     const others = db.select().from(planEntry).where(eq(planEntry.memberId, studio.members.maker.id)).all().filter(entry => !lids.includes(entry.turnId))
     expect(others.filter(entry => entry.startsAt < at + 27 * minute && entry.endsAt > at - 20 * minute)).toEqual([])
     // Gluing at 10:45 would be in the middle of the set-up.
-    expect(await pinAt(studio, turnsOf(studio, 'glue-box').slice(0, 1), at - 15 * minute, studio.members.maker.id)).toMatchObject({ message: 'The maker has first paint on the lid top then, which stays where it is.' })
+    expect(await pinAt(studio, turnsOf(studio, 'glue-box').slice(0, 1), at - 15 * minute, studio.members.maker.id)).toMatchObject({ message: 'The maker has “First paint on the lid top” then, which stays where it is.' })
   })
 
   it('is absent for a turn of another studio', async () => {
