@@ -91,7 +91,7 @@ describe('a day in the studio', () => {
 
     await sealTrays()
     await visit(page, '/hands')
-    await page.getByText(/^Start flood coat while the seal is tacky by .+ to do all 3/).waitFor({ timeout: 60_000 })
+    await page.getByRole('article').filter({ has: page.getByRole('heading', { name: /^Flood coat while the seal is tacky/ }) }).getByText(/^Start by .+ to do all 3/).waitFor({ timeout: 60_000 })
 
     const { path } = await made<{ path: string }>(owner, '/api/wall-links', { name: 'Drying room' })
     const { page: wall } = await openPage(browser, server.origin, { viewport: { width: 834, height: 1112 } })

@@ -140,9 +140,9 @@ describe('a batch card', () => {
     }
     const all = sheets.map(sheet => sheet.says).join(' ')
     expect(all).toMatch(/Bowls.*Bowls 1 and 2/)
-    expect(all).toMatch(/likely .*give it till/)
+    expect(all).toMatch(/likely .*up to /)
     expect(all).toContain('Rags burn: flat outdoors or in the water can.')
-    expect(all).toContain('Follow the product\'s safety data sheet and your local rules.')
+    expect(all).toContain('Follow the product’s safety data sheet and your local rules.')
   }, 120_000)
 
   it('is found from the piece, with the tag of the piece', async () => {

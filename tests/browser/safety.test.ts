@@ -137,7 +137,7 @@ describe('the page about air and fire', () => {
     await page.setViewportSize({ width: 718, height: 1000 })
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(718)
     expect(await page.getByRole('button', { name: 'Print this sheet' }).isVisible()).toBe(false)
-    expect(await page.getByText('Follow the product\'s safety data sheet and your local rules.').first().isVisible()).toBe(true)
+    expect(await page.getByText('Follow the product’s safety data sheet and your local rules.').first().isVisible()).toBe(true)
   }, 120_000)
 
   it('is short enough to be read on a phone, and its standing cautions are one press away', async () => {
