@@ -18,7 +18,7 @@ beforeAll(async () => {
   owner = await firstStudio(server.origin)
   const room = (await owner.post<{ id: number }>('/api/rooms', roomOf('Bench'))).body.id
   const shelf = (await owner.post<{ id: number }>('/api/places', { roomId: room, name: 'Shelf A', kind: 'shelf', capacity: 11, sort: 0 })).body.id
-  const started = await owner.post('/api/batches', { clientKey: 'looks', name: 'Ferry covers', scheduleId: null, pieces, placeId: shelf, order: null, startsAt: new Date().toISOString() })
+  const started = await owner.post('/api/batches', { clientKey: 'looks-batch', name: 'Ferry covers', scheduleId: null, pieces, placeId: shelf, order: null, startsAt: new Date().toISOString() })
   expect(started.status, JSON.stringify(started.body)).toBe(200)
   browser = await openBrowser()
 })
