@@ -41,7 +41,10 @@ describe('what is drawn', () => {
       const [label, hand] = [key.querySelector('span.truncate'), [...key.querySelectorAll('svg')].find(svg => svg.classList.contains('h-9'))].map(each => each?.getBoundingClientRect())
       return label && hand ? Math.max(0, Math.min(label.right, hand.right) - Math.max(label.left, hand.left)) * Math.max(0, Math.min(label.bottom, hand.bottom) - Math.max(label.top, hand.top)) : null
     }))
-    expect(over.filter(each => each !== null)).toEqual(pieces.map(() => 0))
+    // A narrow shelf folds what does not fit in one row.
+    const shown = over.filter(each => each !== null)
+    expect(shown.length).toBeGreaterThanOrEqual(3)
+    expect(shown.filter(each => each > 0)).toEqual([])
     await page.context().close()
   })
 
@@ -50,7 +53,7 @@ describe('what is drawn', () => {
     const place = page.locator('[data-place]')
     await place.waitFor()
     expect(await place.locator('.border-dashed').count()).toBe(11 - pieces.length)
-    expect((await place.boundingBox())!.height).toBeLessThan(280)
+    expect((await place.boundingBox())!.height).toBeLessThan(phone.height / 2)
     await page.context().close()
   })
 })
@@ -90,7 +93,9 @@ describe('on a phone', () => {
     await page.getByRole('alert').filter({ hasText: 'Try again' }).waitFor()
     await page.unroute('**/api/state*')
     await page.getByRole('button', { name: 'Try again' }).click()
-    await page.getByText('Ferry cover').first().waitFor()
+    await page.getByRole('alert').filter({ hasText: 'Try again' }).waitFor({ state: 'detached' })
+    // The covers follow no schedule: there is nothing of them in anybody's hands.
+    if (name !== 'Hands') await page.getByText('Ferry cover').filter({ visible: true }).first().waitFor()
     await page.context().close()
   })
   it('an address that leads nowhere says so', async () => {
