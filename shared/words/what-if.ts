@@ -80,6 +80,13 @@ export function bottleneckSentence(state: BottleneckState): { head: string, rest
   return { head: holds(first.kind), rest: [...wait, `${capital(oneMoreText(first.kind))} would ${gainsText(difference)}.`].join(' ') }
 }
 
+/** "Lid 5 h later", of batches that a change holds up; "" where it holds up none. */
+export function lossesText({ batches }: Difference): string {
+  const later = batches.filter(fare => gainOf(fare) < 0 && isNoticeable(fare)).map(fare => `${fare.name} ${longSpan(-gainOf(fare) / 60_000)}`)
+  const lost = batches.filter(fare => fare.beforeAt !== null && fare.afterAt === null).map(fare => fare.name)
+  return [...later.length > 0 ? [`${listText(later)} later`] : [], ...lost.length > 0 ? [`${listText(lost)} without a time`] : []].join(', ')
+}
+
 /**
  * "finish Box 3 days sooner and take 4 h off the lateness of all batches together": what a change would do. Never the hours themselves: both
  * plans are copies, and neither need end when the plan in force does.
