@@ -3,6 +3,7 @@ import { pin, turn } from '~~/db/schema'
 import { clashSentences } from '~~/server/planning/clashes'
 import { readPlanFacts } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
+import { handsId } from '~~/server/planning/hands'
 import { activityId } from '~~/server/planning/lags'
 import { pinClash } from '~~/server/planning/pin-check'
 import type { PinStudio, Wanted } from '~~/server/planning/pin-check'
@@ -44,8 +45,18 @@ export async function checkPin(db: Database, studioId: number, body: PinBody, no
   if (startsAt < given.zeroAt) return impossible(pinWords.past(given.zeroAt, studio.clock), { startsAt: pinWords.past(given.zeroAt, studio.clock) })
   const wanted = wishes(studio, body, startsAt)
   if (wanted === null) return impossible(pinWords.notPlanned)
+  const unable = unableAt(studio, body.memberId, wanted)
+  if (unable !== null) return impossible(unable, { memberId: unable })
   const clash = pinClash(studio, wanted) ?? await trialClash(studio, wanted, search)
   return clash === null ? { ok: true, zeroAt: given.zeroAt, wanted } : impossible(clash, { startsAt: clash })
+}
+
+/** The sentence for somebody who was asked for and may not do one of the steps. */
+function unableAt({ given, names }: PinStudio, memberId: number | null, wanted: readonly Wanted[]): string | null {
+  if (memberId === null) return null
+  const other = wanted.find(each => each.hands.length > 0 && !each.hands.includes(handsId(memberId)))
+  const work = other && given.works.find(each => each.turns.some(turn => turn.id === other.turnId))
+  return work ? pinWords.notAble(names.get(memberId) ?? '', work.step.name) : null
 }
 
 /** Turns that are not there, or that somebody has begun. */

@@ -18,7 +18,6 @@ export const benchWords = {
   unlock: 'Open with a PIN',
   asksPin: 'asks for a PIN',
   list: 'What wants hands here',
-  current: 'At hand',
   feel: (names: string) => `Feel ${names}`,
   test: (milestone: string) => `Touch test: ${milestone}`,
   movedTitle: 'Where is it now?',

@@ -42,7 +42,6 @@ export const materialWords = {
   hidden: (count: number) => count === 1 ? 'One part is private to the makers.' : `${count} parts are private to the makers.`,
   level: 'It must lie level while it is wet.',
   gloves: (until: MilestoneName) => `Gloves until it is ${milestoneText(until)}.`,
-  gloveName: 'Hands',
   privatePart: 'private',
   isMix: 'a mix',
   notYours: 'Makers and owners change materials. You may read them.',

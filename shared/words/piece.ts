@@ -18,7 +18,6 @@ export const pieceWords = {
   films: 'What is on it',
   nothingOn: 'Nothing on it is drying.',
   layers: 'Layers, the top one first',
-  glueLine: 'glue line',
   settled: 'dry through',
   now: 'What can be done now',
   ahead: 'The way ahead',

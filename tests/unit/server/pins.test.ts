@@ -53,6 +53,13 @@ describe('pinning', () => {
     expect(studio.db.select().from(pin).all()).toEqual([])
   })
 
+  it('refuses somebody who may not do it, and gives it to nobody else', async () => {
+    const studio = await boxes()
+    const [lid] = turnsOf(studio, 'lid-1')
+    expect(await pinAt(studio, [lid ?? 0], Date.parse('2026-04-08T11:00:00Z'), studio.members.helper.id)).toMatchObject({ ok: false, reason: 'impossible', message: expect.stringMatching(/ does not do “First paint on the lid top”: choose somebody who may\.$/) })
+    expect(studio.db.select().from(pin).all()).toEqual([])
+  })
+
   it('refuses two pinned pieces of work for one pair of hands, and work that has been begun', async () => {
     const studio = await boxes()
     const lids = turnsOf(studio, 'lid-1')
