@@ -1,7 +1,7 @@
+import { freely } from '#shared/planning/objective'
 import { busyOf } from '#shared/planning/occupied'
 import { startsOf } from '#shared/planning/types'
 import type { Plan, PlanProblem } from '#shared/planning/types'
-import { freely } from '../../server/planning/anew'
 import { openWithout } from '../../server/planning/reserved'
 import { studioProblem } from '../bench/planner'
 import { judged } from './clock'

@@ -1,14 +1,8 @@
 import { differenceOf } from '~~/server/planning/questions'
 import type { Ask, Base } from '~~/server/planning/questions'
-import type { PlanProblem } from '#shared/planning/types'
+import { freely } from '#shared/planning/objective'
 import type { Anew } from '#shared/schemas/what-if'
 import { isWorthMoving } from '#shared/what-if'
-
-/** Price of a moved step in a plan made anew: none moves for nothing. */
-const nextToNothing = 1
-
-/** The problem of a plan made anew: what is neither pinned nor in hand moves for any gain. */
-export const freely = (problem: PlanProblem): PlanProblem => ({ ...problem, weights: { ...problem.weights, moves: nextToNothing } })
 
 /** What a plan made anew would buy against what the next plan will be, held to its times and searched as long; null where it is not worth the moves, or no answer came in time. */
 export async function anewOf(base: Base, ask: Ask): Promise<Anew | null> {

@@ -9,6 +9,7 @@ import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/plannin
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { minutesFrom } from '#shared/drying/waits'
 import { grouped } from '#shared/grouped'
+import { freely } from '#shared/planning/objective'
 import { planProblem } from '#shared/planning/problem'
 import type { PlanInput } from '#shared/planning/problem'
 import type { Fixed, PlanProblem } from '#shared/planning/types'
@@ -52,10 +53,11 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     jobs: jobsOf(planned, facts, zeroAt),
     fixed,
     horizon: horizonDays * 24 * 60,
-    // A start that nobody has heard of may move for nothing.
-    previous: Object.fromEntries(facts.last.filter(entry => entry.toldAt !== null && entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
+    previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
   }
-  return { problem: planProblem(input), zeroAt, works: planned, hands, untested: new Set(found.flatMap(each => [...each.untested])), leftOut: [...leftOut], films: asked.map(lag => lag.film ?? null) }
+  // A plan that nobody has heard of is a beginning, not a promise.
+  const isHeard = facts.last.some(entry => entry.toldAt !== null)
+  return { problem: isHeard ? planProblem(input) : freely(planProblem(input)), zeroAt, works: planned, hands, untested: new Set(found.flatMap(each => [...each.untested])), leftOut: [...leftOut], films: asked.map(lag => lag.film ?? null) }
 }
 
 function worksOf(facts: PlanFacts): StepWork[] {

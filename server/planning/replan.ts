@@ -1,4 +1,3 @@
-import { freely } from '~~/server/planning/anew'
 import { lastStartsOf } from '~~/server/planning/last-starts'
 import { movesOf } from '~~/server/planning/moves'
 import { missedWindows } from '~~/server/planning/missed-windows'
@@ -17,6 +16,7 @@ import { usePlanRunner } from '~~/server/utils/planRunner'
 import type { PlanResult, RunOptions } from '~~/server/utils/planRunner'
 import { minutesFrom } from '#shared/drying/waits'
 import { check } from '#shared/planning/check'
+import { freely } from '#shared/planning/objective'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 
 /** Solves a problem somewhere: in the worker, or at once where a test or a seed wants to wait for nothing. */

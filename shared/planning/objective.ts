@@ -58,3 +58,9 @@ export function objectiveOf(problem: PlanProblem, entries: readonly PlanEntry[],
 
 /** The parts weighed and summed. */
 export const costOf = (problem: PlanProblem, objective: Objective): number => objectiveParts.reduce((sum, part) => sum + objective[part] * problem.weights[part], 0)
+
+/** Price of a moved step where nothing is held: none moves for nothing. */
+const nextToNothing = 1
+
+/** The same problem for a plan that is not held to the last: what is neither pinned nor in hand moves for any gain. */
+export const freely = (problem: PlanProblem): PlanProblem => ({ ...problem, weights: { ...problem.weights, moves: nextToNothing } })

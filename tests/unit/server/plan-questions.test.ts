@@ -9,6 +9,7 @@ import { atOnce, replan } from '~~/server/planning/replan'
 import { solve } from '~~/server/planner/solve'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
 import { isRefusal } from '~~/server/utils/errors'
+import { standardWeights } from '#shared/planning/types'
 import { anewText } from '#shared/words/plan-anew'
 import { bottleneckSentence, differenceText } from '#shared/words/what-if'
 import { plannedStudio } from '../../helpers/planned-studio'
@@ -138,6 +139,16 @@ describe('a plan made anew', () => {
   it('is not offered for a gain that is not worth the moves', async () => {
     const { db, studioId } = await oneBench()
     expect(await bottleneck(db, studioId, now, ask)).toMatchObject({ anew: null })
+  })
+  it('holds to times that somebody has heard of, and not to those that nobody has', async () => {
+    const { db, studioId } = await oneBench()
+    const weightAt = () => {
+      const changed = changedProblem(db, studioId, null, now)
+      return isRefusal(changed) ? null : changed.given.problem.weights.moves
+    }
+    expect(weightAt()).toBe(standardWeights.moves)
+    db.update(planEntry).set({ toldAt: null }).run()
+    expect(weightAt()).toBe(1)
   })
   it('is never worse than the last one repaired to the new facts', async () => {
     const studio = await oneBench()
