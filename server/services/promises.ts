@@ -25,7 +25,7 @@ const minute = 60_000
 const dayMin = 24 * 60
 const farthest = 366 * 24 * 60 * minute
 /** A new batch is given so long a search, ms; what is planned already is only gone through. */
-const searchMs = 300
+const searchMs = 400
 
 /** The plan that stands, brought to the facts of now and no more. */
 export const asPlanned = { millis: searchMs, schedules: 1 } as const
