@@ -17,7 +17,12 @@ export interface Draws {
   days: Float64Array[]
 }
 
-const many = (count: number, next: () => number) => Float64Array.from({ length: count }, next)
+/** A plain loop: `Float64Array.from` takes several times as long, and this is done for every activity of every scenario. */
+function many(count: number, next: (i: number) => number): Float64Array {
+  const made = new Float64Array(count)
+  for (let i = 0; i < count; i++) made[i] = next(i)
+  return made
+}
 
 /** The draws of scenario `number` of a seed: the same for the same recipe, problem, seed and number. */
 export function drawLuck(problem: PlanProblem, recipe: Recipe, seed: number, number: number): Draws {
@@ -89,8 +94,8 @@ export function drawnScenario(problem: PlanProblem, recipe: Recipe, luck: Draws)
     tails: Float64Array.from(recipe.tails, tail => Math.max(tail.planned, waitFor(tail.film)(tail.wait))),
     againWaits: Float64Array.from(recipe.again, ({ planned, film, wait }) => (wait ? Math.max(planned, waitFor(film)(wait)) : planned)),
     again: Uint8Array.from(recipe.again, (_, i) => Number((luck.again[i] ?? 1) < recipe.luck.rework)),
-    minutes: Float64Array.from(problem.activities, (activity, i) => paced(activity.minutes, i)),
-    againMinutes: Float64Array.from(recipe.again, ({ minutes }, i) => paced(minutes, size + i)),
+    minutes: many(size, i => paced(problem.activities[i]!.minutes, i)),
+    againMinutes: many(recipe.again.length, i => paced(recipe.again[i]!.minutes, size + i)),
     open: problem.resources.map(({ open }, i) => (open ? hoursLeft(open, recipe.luck.benchShare, luck.days[i] ?? new Float64Array()) : null)),
     breakable: true,
   }

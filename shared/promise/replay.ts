@@ -3,8 +3,8 @@ import type { Plan, PlanProblem } from '#shared/planning/types'
 import { grouped } from '#shared/grouped'
 import { KeepApart } from '#shared/promise/keep-apart'
 import { firstOpening, intoWindow, raise } from '#shared/promise/moments'
-import { operationsOf } from '#shared/promise/operations'
-import type { Operation } from '#shared/promise/operations'
+import { columnsOf, operationsOf } from '#shared/promise/operations'
+import type { Columns, Operation } from '#shared/promise/operations'
 import { rowsOf } from '#shared/promise/rows'
 import type { Rows } from '#shared/promise/rows'
 import { turnsOf } from '#shared/promise/turns'
@@ -36,9 +36,7 @@ export class Replay {
   private readonly apart: KeepApart
   /** The activity whose dust, film or vapour an operation makes; -1 for a set-up. */
   private readonly owner: Int32Array
-  private readonly release: Float64Array
-  private readonly notBefore: Float64Array
-  private readonly simple: Uint8Array
+  private readonly facts: Columns
   private readonly keys: Float64Array
   private readonly ends: Float64Array
   private readonly starts: Float64Array
@@ -72,13 +70,11 @@ export class Replay {
     this.turns = rowsOf(operations.map((_, i) => turns.get(i) ?? []), ['first'])
     this.apart = new KeepApart(problem)
     this.owner = Int32Array.from(operations, (each, i) => each.activity ?? (each.again === null ? -1 : recipe.again[i - this.firstAgain]!.activity))
-    this.release = Float64Array.from(operations, each => each.release)
-    this.notBefore = Float64Array.from(operations, each => each.notBefore)
-    this.simple = Uint8Array.from(operations, each => Number(each.simple))
+    this.facts = columnsOf(operations)
     this.keys = new Float64Array(count)
     this.starts = new Float64Array(count)
     this.ends = new Float64Array(count)
-    this.minutes = Float64Array.from(operations, each => each.minutes)
+    this.minutes = this.facts.minutes.slice()
     this.last = new Int32Array(count)
     this.order = Int32Array.from(operations.map((_, i) => i).filter(i => operations[i]!.plannedAt < Infinity)
       .sort((a, b) => operations[a]!.plannedAt - operations[b]!.plannedAt || this.rank(b) - this.rank(a) || a - b))
@@ -100,10 +96,10 @@ export class Replay {
   run(scenario: Scenario, waits = true): Float64Array {
     this.prepare(scenario)
     this.propagate(scenario, waits)
-    const { order } = this
+    const { order, wanted } = this
     const sorted = this.inOrder(scenario)
     let left = 0
-    for (let n = 0; n < order.length; n++) if (this.wanted[order[n]!] === 1 && this.isOn(order[n]!, scenario)) left++
+    for (let n = 0; n < order.length; n++) if (wanted[order[n]!] === 1 && this.isOn(order[n]!, scenario)) left++
     for (let n = 0; n < sorted.length && left > 0; n++) {
       const i = order[sorted[n]! - Math.floor(sorted[n]! / this.spread) * this.spread]!
       this.place(i, scenario, waits)
@@ -141,7 +137,7 @@ export class Replay {
 
   /** When each could be begun were hands always free: the order in which a studio comes to its work. */
   private propagate(scenario: Scenario, waits: boolean) {
-    const { order, operations, keys, starts, ends, minutes, release, notBefore } = this
+    const { order, keys, starts, ends, minutes, facts: { release, notBefore, fixedAt } } = this
     const { at: from, of: { from: before, lag: lags } } = this.after
     for (let n = 0; n < order.length; n++) {
       const i = order[n]!
@@ -152,8 +148,7 @@ export class Replay {
         const moment = this.originOf(i, before[k]!) + (lag < 0 ? this.afterCoat(i, scenario) : scenario.least[lag]!)
         if (moment > at) at = moment
       }
-      const fixed = operations[i]!.fixedAt
-      if (fixed !== null) at = fixed
+      if (!Number.isNaN(fixedAt[i]!)) at = fixedAt[i]!
       keys[i] = at
       starts[i] = at
       ends[i] = at + minutes[i]!
@@ -185,7 +180,7 @@ export class Replay {
   /** Earliest start inside the windows of every lag; past a missed one. */
   private ready(i: number, from: number, scenario: Scenario): number {
     const { at: rows, of: { from: origins, lag: lags, plain } } = this.after
-    let at = Math.max(from, this.release[i]!)
+    let at = Math.max(from, this.facts.release[i]!)
     for (let before = NaN; before !== at;) {
       before = at
       for (let k = rows[i]!; k < rows[i + 1]!; k++) {
@@ -194,7 +189,7 @@ export class Replay {
         if (plain[k] === 1) at = Math.max(at, origin + (lag < 0 ? this.afterCoat(i, scenario) : scenario.least[lag]!))
         else at = intoWindow(scenario.windows[lag]!, origin, at)
       }
-      if (this.simple[i] === 1) return at
+      if (this.facts.simple[i] === 1) return at
     }
     return at
   }
@@ -223,20 +218,20 @@ export class Replay {
   }
 
   private place(i: number, scenario: Scenario, waits: boolean) {
-    const operation = this.operations[i]!
     const minutes = this.minutes[i]!
-    if (operation.fixedAt !== null) {
-      const start = operation.fixedAt > 0 ? this.ready(i, operation.fixedAt, scenario) : operation.fixedAt
+    const fixed = this.facts.fixedAt[i]!
+    if (!Number.isNaN(fixed)) {
+      const start = fixed > 0 ? this.ready(i, fixed, scenario) : fixed
       return this.keep(i, start, start + minutes)
     }
-    let at = waits ? Math.max(0, this.notBefore[i]!, this.turnAt(i), this.freeAt(i)) : 0
-    const splittable = operation.splittable || (scenario.breakable && minutes > longMin)
-    const atOnce = splittable || operation.mayRunOver
+    let at = waits ? Math.max(0, this.facts.notBefore[i]!, this.turnAt(i), this.freeAt(i)) : 0
+    const splittable = this.facts.splittable[i] === 1 || (scenario.breakable && minutes > longMin)
+    const atOnce = splittable || this.facts.mayRunOver[i] === 1
     let length = minutes
     for (let before = NaN; before !== at;) {
-      if (Number.isNaN(before) || this.simple[i] === 0) at = this.ready(i, at, scenario)
+      if (Number.isNaN(before) || this.facts.simple[i] === 0) at = this.ready(i, at, scenario)
       before = at
-      if (operation.recovers) length = minutes + this.recovery(i, at, scenario)
+      if (this.facts.recovers[i] === 1) length = minutes + this.recovery(i, at, scenario)
       at = this.opens(i, at, atOnce ? Math.min(1, length) : length, scenario)
       if (waits && this.owner[i]! >= 0) at = this.apart.firstFree(this.owner[i]!, at, length)
     }
