@@ -7,6 +7,7 @@ import { absent, conflict } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
 import type { NewPlace, NewRoom, PlacePatch, RoomPatch, RoomWire } from '#shared/schemas/room'
+import { arrangeRefusals } from '#shared/words/arrange'
 import { settings } from '#shared/words/settings'
 
 /** The studio's rooms with their places, each in its own order. */
@@ -73,9 +74,12 @@ export function findStanding(tx: Transaction, studioId: number, placeId: number)
 
 export function changePlace(db: Database, studioId: number, id: number, patch: PlacePatch): { ok: true } | Refusal {
   return orRefuse(() => change(db, studioId, 'places', (tx): { ok: true } | Refusal => {
-    if (!tx.select({ id: place.id }).from(place).where(owned(place, studioId, id)).get()) return absent(settings.placeAbsent)
+    const stands = tx.select({ name: place.name, roomId: place.roomId }).from(place).where(owned(place, studioId, id)).get()
+    if (!stands) return absent(settings.placeAbsent)
     if (patch.roomId !== undefined && !hasRoom(tx, studioId, patch.roomId)) return absent(settings.roomAbsent)
     const { size, pieces } = findStanding(tx, studioId, id)
+    // What stands there dries in its room's air: its films would be foretold by the wrong one.
+    if (patch.roomId !== undefined && patch.roomId !== stands.roomId && pieces.length > 0) return conflict(arrangeRefusals.otherRoom(stands.name, pieces), { pieces })
     if (patch.capacity !== undefined && patch.capacity < size) return conflict(settings.placeTooSmall(size, pieces), { size })
     if (Object.keys(patch).length > 0) tx.update(place).set(patch).where(owned(place, studioId, id)).run()
     return { ok: true }

@@ -35,7 +35,7 @@ export const fields = {
   nightDrop: 'The night drop is a number from 0 to 30 °C.',
   placeName: 'Give the place a name, at most 80 characters.',
   placeKind: 'Choose what kind of place it is, such as shelf or clamps.',
-  capacity: 'The capacity is a whole number of size units, from 1 to 9999.',
+  capacity: 'How many it holds is a whole number from 1 to 9999.',
   carrierName: 'Give the carrier a name, at most 80 characters.',
   callKind: 'There is no call of that kind.',
   wanted: 'Say whether the call is wanted: yes or no.',

@@ -51,6 +51,14 @@ describe('a place in use', () => {
     expect(answer.status).toBe(409)
     expect(answer.body.data.message).toBe('What stands here now takes up 2: Ledger 1. Move something first.')
   })
+  it('does not move to another room with what stands there', async () => {
+    const other = (await owner.post<{ id: number }>('/api/rooms', roomOf('Side room'))).body.id
+    const answer = await owner.patch<Refused>(`/api/places/${shelf}`, { roomId: other })
+    expect(answer.status).toBe(409)
+    expect(answer.body.data).toMatchObject({ message: 'Long shelf stays in its room while pieces stand there: Ledger 1. Empty it first.', current: { pieces: ['Ledger 1'] } })
+    expect((await owner.patch(`/api/places/${shelf}`, { roomId: room, sort: 0 })).status).toBe(200)
+    expect((await owner.delete(`/api/rooms/${other}`)).status).toBe(200)
+  })
   it('stays for the history\'s sake when the piece has moved on', async () => {
     closeStay()
     const answer = await owner.delete<Refused>(`/api/places/${shelf}`)
@@ -75,7 +83,7 @@ describe('rooms and places', () => {
     expect(answer.body.data.fields).toEqual({
       name: 'Give the place a name, at most 80 characters.',
       kind: 'Choose what kind of place it is, such as shelf or clamps.',
-      capacity: 'The capacity is a whole number of size units, from 1 to 9999.',
+      capacity: 'How many it holds is a whole number from 1 to 9999.',
     })
   })
   it('come back in their order', async () => {
