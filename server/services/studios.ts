@@ -9,6 +9,7 @@ import type { Database } from '~~/server/utils/database'
 import { impossible, isRefusal, notAllowed } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { makePasswordHash } from '~~/server/utils/password'
+import { usualHours } from '#shared/first-steps'
 import type { NewStudio, StudioPatch, StudioWire } from '#shared/schemas/studio'
 import { settings } from '#shared/words/settings'
 
@@ -16,9 +17,6 @@ import { settings } from '#shared/words/settings'
 export function isUnclaimed(db: Database): boolean {
   return (db.select({ n: count() }).from(studio).where(eq(studio.demo, false)).get()?.n ?? 0) === 0
 }
-
-// Without any hours nothing could be planned; Settings changes them.
-const usualWeek = [1, 2, 3, 4, 5]
 
 /**
  * Makes a studio with the starter library and its owner. Anybody may make the first one; afterwards only somebody signed in, so that an
@@ -35,7 +33,7 @@ export async function createStudio(db: Database, signedIn: SignedIn | null, inpu
     if (isRefusal(personId)) return personId
     const { id: studioId } = tx.insert(studio).values({ name: input.name, zone: input.zone, madeAt: now }).returning({ id: studio.id }).get()
     tx.insert(member).values({ studioId, personId, role: 'owner' }).run()
-    tx.insert(openHours).values(usualWeek.map(weekday => ({ studioId, weekday, fromMin: 9 * 60, toMin: 17 * 60 }))).run()
+    tx.insert(openHours).values(usualHours.map(stretch => ({ ...stretch, studioId }))).run()
     seedLibrary(tx, studioId)
     return { ok: true as const, studioId, token: openSession(tx, personId, studioId, now) }
   }, { behavior: 'immediate' })

@@ -79,10 +79,11 @@ export const roomForm = {
   exhaust: 'Exhaust',
   unknown: 'Empty when you do not know it: then the caution stays high.',
   nightDrop: 'How much colder it gets by night',
+  nightDropHint: (usual: string) => `Empty when you do not know it: then ${usual} is taken.`,
   sort: 'Order on the board',
   kind: 'Kind',
-  capacity: 'How much it holds',
-  capacityHint: 'In units of size: a piece counts one unless it is set up as larger.',
+  capacity: 'How many pieces it holds',
+  capacityHint: 'A large piece can count for more than one; that is said when its batch starts.',
   placeSays: (kind: PlaceKind, capacity: number) => `${placeNames[kind]}, holds ${capacity}`,
   facts: { heated: 'heated', unheated: 'not heated', outdoor: 'outdoors', sprayArea: 'spray area', sleptIn: 'slept in' },
 } as const

@@ -53,6 +53,12 @@ describe('an empty studio', () => {
     await visit(page, '/board')
     await page.getByRole('heading', { name: 'Five things, in any order' }).waitFor()
     expect(await page.getByText('Look at it filled').count()).toBe(0)
+    // What came with the studio is not called done before somebody of it has said so.
+    await page.getByText('Working hours, as it came').waitFor()
+    await page.getByText('Materials you use, as it came').waitFor()
+    await page.getByRole('link', { name: 'Look at the hours' }).click()
+    await page.getByRole('link', { name: 'Back to the first steps' }).click()
+    await page.getByRole('heading', { name: 'Five things, in any order' }).waitFor()
     const own = await openPage(browser, server.origin, {}, owner)
     await own.page.route('**/api/demo', route => route.abort())
     await visit(own.page, '/board')
