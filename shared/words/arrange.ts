@@ -16,6 +16,7 @@ export const arrangeWords = {
   notYours: 'Makers and owners arrange rooms and places.',
   failed: 'The studio could not be drawn.',
   waiting: 'Drawing the studio',
+  keysOf: (place: string) => `Keys of ${place}`,
   hold: (place: string) => `Drag ${place}; arrow keys move it`,
   earlier: (name: string) => `${name}: earlier`,
   later: (name: string) => `${name}: later`,

@@ -47,6 +47,8 @@ const stands = async () => (await owner.get<RoomWire[]>('/api/rooms')).body.map(
 const first = [['Bench', 'Shelf A 6', 'Shelf B 6', 'Shelf C 6'], ['Loft', 'Clamps 4']]
 const key = (page: Page, name: string | RegExp) => page.getByRole('button', { name, exact: typeof name === 'string' })
 const hold = (page: Page, place: string) => key(page, `Drag ${place}; arrow keys move it`)
+/** On a phone the keys of one place at a time lie open. */
+const unfold = (page: Page, place: string) => key(page, `Keys of ${place}`).click()
 const isFocused = (page: Page, name: string) => key(page, name).evaluate(each => each === document.activeElement)
 
 async function open(who: Visitor, options = {}) {
@@ -102,6 +104,7 @@ describe('the drawing of the studio', () => {
 
   it('is arranged by keys of 44 px and by the keyboard alone, and the focus stays', async () => {
     const { page } = await open(maker)
+    await unfold(page, 'Shelf B')
     const { width, height } = (await key(page, 'Shelf B: earlier').boundingBox())!
     expect([width >= 44, height >= 44]).toEqual([true, true])
     await key(page, 'Shelf B: earlier').click()
@@ -113,6 +116,22 @@ describe('the drawing of the studio', () => {
     expect(await isFocused(page, 'Drag Shelf C; arrow keys move it')).toBe(true)
     await key(page, 'Loft: earlier').click()
     await expect.poll(stands).toEqual([['Loft', 'Shelf C 6', 'Clamps 4'], ['Bench', 'Shelf B 6', 'Shelf A 6']])
+    await page.context().close()
+  })
+
+  it('shows on a phone the keys of one place at a time, on a tablet all', async () => {
+    const { page } = await open(maker)
+    const shown = async () => (await page.getByRole('button', { name: /: earlier$/ }).filter({ visible: true }).evaluateAll(keys => keys.map(each => each.getAttribute('aria-label')))).filter(each => each !== 'Loft: earlier')
+    expect(await shown()).toEqual([])
+    await unfold(page, 'Shelf B')
+    expect(await shown()).toEqual(['Shelf B: earlier'])
+    await unfold(page, 'Clamps')
+    expect(await shown()).toEqual(['Clamps: earlier'])
+    expect(await axeProblems(page)).toEqual([])
+    await unfold(page, 'Clamps')
+    expect(await shown()).toEqual([])
+    await page.setViewportSize({ width: 834, height: 1112 })
+    expect(await shown()).toHaveLength(4)
     await page.context().close()
   })
 
@@ -136,6 +155,7 @@ describe('the drawing of the studio', () => {
 
   it('lets nothing in use vanish, and names the pieces', async () => {
     const { page } = await open(maker)
+    await unfold(page, 'Shelf A')
     await page.getByRole('textbox', { name: 'Places on Shelf A' }).fill('1')
     await page.getByRole('alert').filter({ hasText: 'Shelf A holds 2 now: Ledger 1 and Ledger 2. Move something first.' }).waitFor()
     expect(await axeProblems(page)).toEqual([])
@@ -151,6 +171,7 @@ describe('the drawing of the studio', () => {
   it('says that somebody else changed it meanwhile, and shows how it stands', async () => {
     const { page } = await open(maker)
     // Deaf to what others do: the word of it must not come first.
+    await unfold(page, 'Shelf B')
     await page.route('**/api/state*', route => route.abort())
     const was = first.map((_, index) => index === 0 ? { id: ids.bench, places: ['Shelf A', 'Shelf B', 'Shelf C'].map(name => ({ id: ids[name], capacity: 6 })) } : { id: ids.loft, places: [{ id: ids.clamps, capacity: 4 }] })
     expect((await owner.put('/api/places/arrangement', { was, now: was.toReversed() })).status).toBe(200)
@@ -163,6 +184,7 @@ describe('the drawing of the studio', () => {
 
   it('keeps what was done while the studio is out of reach, and sends it when asked', async () => {
     const { page } = await open(maker)
+    await unfold(page, 'Clamps')
     await page.route('**/api/places/arrangement', route => route.abort())
     await key(page, 'Places on Clamps: more').click()
     await page.getByRole('alert').filter({ hasText: /\S/ }).waitFor()
