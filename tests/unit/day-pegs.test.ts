@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { dayPlan } from '#shared/day-pegs'
-import { fitPegs } from '#shared/day-ruler'
+import { fitPegs, rulerRows } from '#shared/day-ruler'
 import type { PieceState, TurnState } from '#shared/schemas/piece-state'
 import { at, clockAt, groupState, noon, pieceState, readAll, studioWith } from '../helpers/board'
 
@@ -38,12 +38,17 @@ describe('the day ruler', () => {
   it('lays what presses and then what comes first, as many as two rows hold, and counts the rest', () => {
     // Each peg is 11 * 7.6 + 32 = 115.6 px wide on a ruler of 240 px, so a row holds two at the most; all stand at one instant, where a row holds one.
     const peg = (key: number, urgent = false) => ({ key, at: at(13 + key / 100), title: `Check ${key} of 5`, says: '', urgent })
-    const { pegs, more } = fitPegs([peg(1), peg(2), peg(3), peg(4, true)], () => 0, 240)
+    const { pegs, more } = fitPegs([peg(1), peg(2), peg(3), peg(4, true)], () => 0, 240, 2)
     expect(pegs.map(each => each.peg.key)).toEqual([1, 4])
     expect(more).toBe(2)
   })
+  it('lays one row in a low window, where it would hide the shelves', () => {
+    expect([rulerRows(900), rulerRows(1112)]).toEqual([1, 2])
+    const peg = (key: number) => ({ key, at: at(13 + key / 100), title: 'Sand', says: '', urgent: false })
+    expect(fitPegs([peg(1), peg(2)], () => 0, 240, rulerRows(900))).toMatchObject({ more: 1, pegs: [{ peg: { key: 1 } }] })
+  })
   it('lays all where there is room', () => {
     const pegs = [1, 2, 3].map(key => ({ key, at: key, title: 'Sand', says: '', urgent: false }))
-    expect(fitPegs(pegs, at => at / 4, 1000)).toMatchObject({ more: 0, pegs: [{ place: { row: 0 } }, { place: { row: 0 } }, { place: { row: 0 } }] })
+    expect(fitPegs(pegs, at => at / 4, 1000, 2)).toMatchObject({ more: 0, pegs: [{ place: { row: 0 } }, { place: { row: 0 } }, { place: { row: 0 } }] })
   })
 })
