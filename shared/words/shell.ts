@@ -6,6 +6,7 @@ export const shellWords = {
   skip: 'To the page',
   main: 'Main',
   more: 'More',
+  opening: 'Opening the page',
   board: 'Board',
   pieces: 'Pieces',
   hands: 'Hands',
