@@ -24,7 +24,7 @@ export const callSettings = {
   } satisfies Record<CallKind, { label: string, hint: string }>,
   quiet: {
     title: 'Quiet hours',
-    on: 'Quiet hours',
+    on: 'Let calls wait',
     hint: 'Calls wait until they end. What nobody needs any more by then is not sent. Calls about fire come all the same.',
     from: 'From',
     to: 'To',

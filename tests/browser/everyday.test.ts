@@ -125,7 +125,7 @@ describe('a sensor\'s address', () => {
 describe('quiet hours', () => {
   it('are set for oneself in Settings', async () => {
     await open(maker, '/settings/calls')
-    await page.getByRole('switch', { name: 'Quiet hours' }).click()
+    await page.getByRole('switch', { name: 'Let calls wait' }).click()
     await page.getByLabel('From', { exact: true }).fill('22:00')
     await page.getByRole('form', { name: 'Quiet hours' }).getByRole('button', { name: 'Save' }).click()
     await page.getByRole('form', { name: 'Quiet hours' }).getByText('Saved.').waitFor()

@@ -78,6 +78,28 @@ describe('the ways', () => {
   })
 })
 
+describe('a page that keeps waiting', () => {
+  it('is waited for with a word after a moment, and no word when it comes at once', async () => {
+    const page = await at('/settings/hours', { viewport: { width: 834, height: 1112 } })
+    const sign = page.getByRole('status').filter({ hasText: 'Opening the page' })
+    let letGo = () => {}
+    const held = new Promise<void>((resolve) => { letGo = resolve })
+    await page.route('**/api/materials', async (route) => {
+      await held
+      await route.continue()
+    })
+    await page.getByRole('link', { name: 'Materials', exact: true }).click()
+    await sign.waitFor()
+    expect(await page.getByRole('heading', { level: 1 }).innerText()).toBe('Hours and days off')
+    expect(await axeProblems(page)).toEqual([])
+    letGo()
+    await page.getByRole('heading', { level: 1, name: 'Materials' }).waitFor()
+    expect(await sign.count()).toBe(0)
+    await page.unroute('**/api/materials')
+    await page.context().close()
+  })
+})
+
 describe('on a phone', () => {
   it.each(['en-GB', 'en-US'])('working hours fit, as %s has its clock', async (locale) => {
     const page = await at('/settings/hours', { viewport: phone, locale })
@@ -96,6 +118,13 @@ describe('on a phone', () => {
     await page.getByRole('alert').filter({ hasText: 'Try again' }).waitFor({ state: 'detached' })
     // The covers follow no schedule: there is nothing of them in anybody's hands.
     if (name !== 'Hands') await page.getByText('Ferry cover').filter({ visible: true }).first().waitFor()
+    await page.context().close()
+  })
+  it('the keys of a time hold their words', async () => {
+    const page = await at('/air', { viewport: phone })
+    await page.getByRole('radio', { name: '60 min ago' }).waitFor()
+    const over = await page.locator('label:has(input[aria-label$="min ago"])').evaluateAll(keys => keys.map(key => [...key.querySelectorAll('span')].every(word => word.getBoundingClientRect().width <= key.clientWidth)))
+    expect(over).toEqual([true, true, true, true])
     await page.context().close()
   })
   it('an address that leads nowhere says so', async () => {

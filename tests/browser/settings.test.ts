@@ -135,7 +135,7 @@ describe('rooms and places', () => {
     await dialog.getByText('Choose what kind of place it is, such as shelf or clamps.').waitFor()
     expect(await dialog.getByLabel('Name').inputValue()).toBe('Rail')
     await dialog.getByLabel('Kind').selectOption('rail')
-    await dialog.getByRole('button', { name: 'How much it holds: more' }).press('Enter')
+    await dialog.getByRole('button', { name: 'How many pieces it holds: more' }).press('Enter')
     await dialog.getByRole('button', { name: 'Save' }).press('Enter')
     await page.getByText('rail, holds 1').waitFor()
     await page.getByRole('button', { name: 'Take Shelf A away' }).click()
@@ -144,7 +144,45 @@ describe('rooms and places', () => {
   })
 })
 
+describe('a room', () => {
+  it('is made from a name alone; what a night takes is asked of one without heating, and may stay unknown', async () => {
+    const { page } = await openPage(browser, server.origin, {}, owner)
+    await visit(page, '/settings/rooms')
+    const dialog = page.getByRole('dialog')
+    const drop = dialog.getByRole('textbox', { name: 'How much colder it gets by night' })
+    const add = async (name: string, heated: boolean) => {
+      await page.getByRole('button', { name: 'Add a room' }).click()
+      await dialog.getByLabel('Name').fill(name)
+      expect(await drop.count()).toBe(0)
+      if (!heated) {
+        await dialog.getByRole('switch', { name: 'Heated' }).click()
+        await dialog.getByText('Empty when you do not know it: then 6 °C is taken.').waitFor()
+        expect(await drop.inputValue()).toBe('')
+      }
+      await dialog.getByRole('button', { name: 'Save' }).click()
+      await page.getByRole('region', { name }).waitFor()
+    }
+    await add('Warm room', true)
+    await add('Cold store', false)
+    const rooms = (await owner.get<{ id: number, name: string, heated: boolean, nightDropC: number }[]>('/api/rooms')).body
+    expect(rooms.find(room => room.name === 'Cold store')).toMatchObject({ heated: false, nightDropC: 6 })
+    for (const room of rooms.filter(each => ['Warm room', 'Cold store'].includes(each.name))) await owner.delete(`/api/rooms/${room.id}`)
+    await page.context().close()
+  })
+})
+
 describe('who sees what', () => {
+  it('offers a helper no way that ends in a refusal', async () => {
+    const { page } = await openPage(browser, server.origin, {}, helper)
+    await visit(page, '/hands')
+    expect(await page.getByRole('navigation').filter({ visible: true }).getByRole('link').allInnerTexts()).toEqual(['Hands', 'Board', 'Handling sheet', 'Air'])
+    await page.getByRole('button', { name: 'More' }).click()
+    expect(await page.getByRole('dialog').getByRole('link', { name: 'Start a batch' }).count()).toBe(0)
+    await page.setViewportSize({ width: 1440, height: 900 })
+    expect(await page.getByRole('link', { name: 'I put something on' }).filter({ visible: true }).count()).toBe(0)
+    await page.context().close()
+  })
+
   it('keeps what is the owner’s from a helper, on the page as on the server', async () => {
     const { page } = await openPage(browser, server.origin, {}, helper)
     await visit(page, '/settings')
