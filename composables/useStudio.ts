@@ -17,7 +17,8 @@ import type { Door } from '~/stores/studio'
 export async function useStudio(door: Door = {}, acting: Ref<Who | null> | null = null) {
   const store = useStudioStore()
   const untold = useUntoldStore()
-  const { session } = useSession()
+  const { session, load: askWho } = useSession()
+  const route = useRoute()
   const shell = useShell()
   const deviceNow = useClock()
   const now = computed(() => deviceNow.value + store.clockShift)
@@ -49,6 +50,13 @@ export async function useStudio(door: Door = {}, acting: Ref<Who | null> | null 
   useIntervalFn(() => untold.acts.length > 0 && void untold.tellAll(), 15_000)
   // The word came through and the state did not: the next word may be twenty seconds away.
   useIntervalFn(() => store.failed && live.open.value && void store.load(door).catch(() => undefined), 2000)
+
+  // Signed out elsewhere, the page would stand as it was and look alive: a stream refused does not say why.
+  useIntervalFn(async () => {
+    if (live.open.value || acting || Object.keys(door).length > 0) return
+    const found = await askWho().catch(() => null)
+    if (found && !found.person) await navigateTo({ path: '/sign-in', query: { to: route.fullPath } })
+  }, 10_000)
 
   // Last, for after a wait nothing can be tied to the page any more: what was would never start, or never end.
   await callOnce(`studio ${Object.values(door).join()}`, () => store.load(door).catch((error: unknown) => {

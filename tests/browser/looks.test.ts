@@ -3,7 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
 import { startServer } from '../helpers/server'
 import type { TestServer } from '../helpers/server'
-import { firstStudio } from '../helpers/sign-in'
+import { firstStudio, joinAs } from '../helpers/sign-in'
 import type { Visitor } from '../helpers/sign-in'
 import { roomOf } from '../api/access/rows'
 
@@ -96,6 +96,18 @@ describe('a page that keeps waiting', () => {
     await page.getByRole('heading', { level: 1, name: 'Materials' }).waitFor()
     expect(await sign.count()).toBe(0)
     await page.unroute('**/api/materials')
+    await page.context().close()
+  })
+})
+
+describe('a page whose person was signed out elsewhere', () => {
+  it('asks to sign in, and leads back', async () => {
+    const maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
+    const { page } = await openPage(browser, server.origin, { viewport: phone }, maker)
+    await visit(page, '/pieces?find=ferry')
+    expect((await maker.post('/api/auth/sign-out', {})).status).toBe(200)
+    await page.getByRole('heading', { name: 'Sign in' }).waitFor({ timeout: 45_000 })
+    expect(new URL(page.url()).searchParams.get('to')).toBe('/pieces?find=ferry')
     await page.context().close()
   })
 })
