@@ -48,12 +48,18 @@ describe('what is drawn', () => {
     await page.context().close()
   })
 
-  it('shows every free place where places are arranged, two places to a phone’s screen', async () => {
+  it('shows every free place of the shelf that is opened to be arranged, four shelves to a phone’s screen', async () => {
     const page = await at('/arrange', { viewport: phone })
     const place = page.locator('[data-place]')
     await place.waitFor()
-    expect(await place.locator('.border-dashed').count()).toBe(11 - pieces.length)
-    expect((await place.boundingBox())!.height).toBeLessThan(phone.height / 2)
+    const folded = (await place.boundingBox())!
+    expect(folded.height).toBeLessThan(phone.height / 4)
+    await page.getByRole('button', { name: 'Keys of Shelf A' }).click()
+    const opened = (await place.boundingBox())!
+    const free = await place.locator('.border-dashed').evaluateAll(places => places.map(each => each.getBoundingClientRect().bottom))
+    expect(free).toHaveLength(11 - pieces.length)
+    expect(Math.max(...free)).toBeLessThanOrEqual(opened.y + opened.height)
+    expect(opened.height).toBeLessThan(phone.height / 2)
     await page.context().close()
   })
 })
