@@ -127,7 +127,7 @@ function findShut(tx: Transaction, studioId: number, memberId: number | null, ro
   return null
 }
 
-/** Writes down the answers that came with an act, for each room that they were asked for. Without an exhaust they stand for this one coat. */
+/** Writes down the answers that came with an act, for each room that they were asked for, at the time the work was done: told a day late, nothing begins now and nobody is called. Without an exhaust they stand for this one coat. */
 export function noteStart(tx: Transaction, studioId: number, memberId: number | null, request: ActRequest, body: Record<string, unknown>, actId: number, now: number) {
   const work = solventWork(tx, studioId, request, body)
   if (!work?.solvent) return
@@ -137,8 +137,10 @@ export function noteStart(tx: Transaction, studioId: number, memberId: number | 
     const covered = covers(start, room, request.kind, now)
     if (!covered && request.vapour) {
       const { exhaust, flamesOff, nobodyElse } = request.vapour
+      // Never before the start that it follows: the newest answers are those in force.
+      const at = Math.max(start?.at ?? 0, Math.min(now, Date.parse(request.doneAt)))
       if (start) end(tx, studioId, room.id, now)
-      tx.insert(vapourStart).values({ studioId, roomId: room.id, actId, at: now, memberId, exhaust, flamesOff, nobodyElse, endedAt: request.kind !== 'began' && exhaust === 'none' && !room.outdoor ? now : null }).run()
+      tx.insert(vapourStart).values({ studioId, roomId: room.id, actId, at, memberId, exhaust, flamesOff, nobodyElse, endedAt: request.kind !== 'began' && exhaust === 'none' && !room.outdoor ? now : null }).run()
     }
     else if (covered && start && start.exhaust === 'none' && request.kind !== 'began') end(tx, studioId, room.id, now)
   }

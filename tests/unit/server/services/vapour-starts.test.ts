@@ -24,11 +24,11 @@ function studioWith(place: 'booth' | 'shelf', oldObject = false) {
   const started = startBatch(db, studioId, { member: members.maker }, { clientKey: 'start-one', name: 'Boards', scheduleId: null, pieces: ['Board 1', 'Board 2', 'Board 3', 'Board 4'], sizeUnits: 1, placeId: studio.places[place], order: null, startsAt: iso(now - hour), oldObject }, now)
   if (!started.ok) throw new Error(started.message)
   let keys = 0
-  const tell = (kind: ActRequest['kind'], no: number, body: ActRequest['body'], given: { vapour?: VapourAnswers, at?: number, by?: Teller } = {}) => {
+  const tell = (kind: ActRequest['kind'], no: number, body: ActRequest['body'], given: { vapour?: VapourAnswers, at?: number, doneAt?: number, by?: Teller } = {}) => {
     const id = started.pieceIds[no - 1] ?? 0
     const pieces = pieceStates(db, studioId, [id]).map(each => ({ id: each.id, version: each.version }))
     const at = given.at ?? now
-    return recordAct(db, studioId, given.by ?? { member: members.maker }, { clientKey: `key-of-test-${++keys}`, kind, doneAt: iso(at), pieces, body, ...(given.vapour ? { vapour: given.vapour } : {}) }, at)
+    return recordAct(db, studioId, given.by ?? { member: members.maker }, { clientKey: `key-of-test-${++keys}`, kind, doneAt: iso(given.doneAt ?? at), pieces, body, ...(given.vapour ? { vapour: given.vapour } : {}) }, at)
   }
   const lacquer = (no: number, given?: Parameters<typeof tell>[3]) => tell('coat on', no, { step: null, materialVersionId: studio.materialOf('nitrocellulose-lacquer') }, given)
   return { ...studio, tell, lacquer }
@@ -52,6 +52,26 @@ describe('solvent work in a room', () => {
     expect(lacquer(3, { at: now + 5 * hour })).toMatchObject({ ok: false, reason: 'conflict' })
     openRoom(db, studioId, members.maker, rooms.spray, now + 2 * hour)
     expect(lacquer(3, { at: now + 3 * hour })).toMatchObject({ ok: false, reason: 'conflict' })
+  })
+
+  it('began when the work was done, however late it is told; told a day late nobody is called, and the next coat is asked about anew', () => {
+    const { lacquer, db, studioId } = studioWith('booth')
+    const calls = (at: number) => wantedReminders(db, studioId, at).filter(each => each.kind === 'vapour')
+    expect(lacquer(1, { vapour: running, doneAt: now - 30 * minute })).toMatchObject({ ok: true })
+    expect(db.select().from(vapourStart).all()).toMatchObject([{ at: now - 30 * minute }])
+    expect(calls(now)).toHaveLength(1)
+    const later = now + 24 * hour
+    expect(lacquer(2, { at: later, doneAt: now + 5 * hour, vapour: running })).toMatchObject({ ok: true })
+    expect(db.select().from(vapourStart).all().at(-1)).toMatchObject({ at: now + 5 * hour, endedAt: null })
+    expect(calls(later)).toEqual([])
+    expect(lacquer(3, { at: later })).toMatchObject({ ok: false, reason: 'conflict' })
+  })
+
+  it('never begins before the start it follows', () => {
+    const { lacquer, db } = studioWith('booth')
+    lacquer(1, { vapour: running })
+    lacquer(2, { at: now + 5 * hour, doneAt: now - 10 * minute, vapour: running })
+    expect(db.select().from(vapourStart).all().map(row => row.at)).toEqual([now, now])
   })
 
   it('asks every time where there is no exhaust', () => {
