@@ -1,6 +1,7 @@
 import { airOf, roomAirs } from '~~/server/work/air'
 import { benchesOf } from '~~/server/work/benches'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
+import { potsOf } from '~~/server/work/pots'
 import { materialsToCome } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { readShut } from '~~/server/planning/vapour'
@@ -36,6 +37,8 @@ export class WaitsToCome {
   readonly #films = new Map<string, FilmToCome | null>()
   readonly #clockOf: (roomId: number | null) => RoomClock
   readonly #airs: Map<number, RoomAir>
+  /** How long what is mixed of an edition lasts in a room. */
+  readonly potOf: ReturnType<typeof potsOf>
   /** Rooms that nobody enters till somebody opens them. */
   readonly shut: ReadonlyMap<number, ShutRoom>
 
@@ -43,6 +46,7 @@ export class WaitsToCome {
     this.#benches = benchesOf(db, facts.owner.id, dryingMaterials(db, facts.owner.id, materialsToCome(facts)))
     const airs = roomAirs(db, facts.owner, now)
     this.#airs = airs
+    this.potOf = potsOf(db, facts.owner, materialsToCome(facts), airs, now)
     this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
   }

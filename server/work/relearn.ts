@@ -18,8 +18,8 @@ interface TestRow { test: typeof touchTest.$inferSelect, coat: CoatRow }
 
 /**
  * Learns anew what the tests of some pieces, or of all, teach about their materials, where a test, its coat, a tin or a reset changed or
- * a year has gone by. Gives the editions whose teaching changed. A new reading alone does not: it moves the films, and their tests are
- * worked out again with the next one.
+ * a year has gone by. Gives the editions whose teaching changed. A new reading alone does not: it moves the films, and tests of the
+ * last 15 days are worked out again when the lesson next changes; older ones keep their bound.
  */
 export function relearn(tx: Transaction, studioId: number, pieceIds: readonly number[] | null, now: number): number[] {
   const versions = tx.selectDistinct({ id: coat.materialVersionId }).from(coat).innerJoin(touchTest, eq(touchTest.coatId, coat.id))

@@ -11,6 +11,8 @@ export type StartAdvice =
   | { code: 'acclimatise', moisture: number, rest: number, when: string }
   | { code: 'still-air' }
   | { code: 'pot-life', minutes: number, sheetMinutes: number, tempC: number }
+  /** `minutes`: the least that a mix lasts; `each`: pieces that one is enough for. */
+  | { code: 'several-mixes', minutes: number, pieces: number, each: number, mixes: number }
   | { code: 'pack-early', when: string }
 
 /** The sentence for one of them. */
@@ -22,6 +24,7 @@ export function startAdviceText(facts: StartAdvice, units: Units = 'metric'): st
     case 'acclimatise': return `Wood and board here come to rest at ${facts.rest.toFixed(1)} % moisture; these are near ${facts.moisture.toFixed(1)} %, from where they lay. Let them lie here till ${facts.when}, or the joint is strained as they settle.`
     case 'still-air': return 'Somebody said that the air moves here: leaf wants it still.'
     case 'pot-life': return `At ${temperatureText(facts.tempC, units)} what is mixed lasts about ${Math.round(facts.minutes)} min; the sheet says ${Math.round(facts.sheetMinutes)}. A deep pot goes off sooner: mix less.`
+    case 'several-mixes': return `What is mixed may go off after ${Math.floor(facts.minutes)} min: enough for ${facts.each} of these ${facts.pieces}. Mix ${facts.mixes} times.`
     case 'pack-early': return `Wrapped before ${facts.when} it may print: two days at least, longer in damp air, and never finish to finish.`
   }
 }

@@ -1,14 +1,10 @@
-import { eq, inArray } from 'drizzle-orm'
-import { materialFigure } from '~~/db/schema'
 import type { Asked, Said } from '~~/server/services/advice/films'
 import { aboutTurn } from '~~/server/services/advice/soon'
 import type { SoonTurn } from '~~/server/services/advice/soon'
-import { scoped } from '~~/server/utils/scoped'
 import { roomAirs } from '~~/server/work/air'
-import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
-import { airAt } from '#shared/air/room'
-import { potLifeAt } from '#shared/drying/pot-life'
-import { trackRoom } from '#shared/drying/tools'
+import { piecesOfMix, potsOf } from '~~/server/work/pots'
+import type { Pot } from '~~/server/work/pots'
+import { grouped } from '#shared/grouped'
 import { clockTime, studioZone } from '#shared/time'
 import { startAdviceText } from '#shared/words/advice-start'
 import type { StartAdvice } from '#shared/words/advice-start'
@@ -18,35 +14,40 @@ const packAfterMs = 48 * 60 * 60_000
 /** A pot life this near its sheet's needs no word: a share of it, planning value. */
 const nearSheet = 0.15
 
-/** What hands are to mind at a step: how long a mix lasts, packing too early. */
+/** What hands are to mind at a step: how long a mix lasts and how many times it is mixed, packing too early. */
 export function handlingAdvice(asked: Asked, soon: readonly SoonTurn[]): Said[] {
   const say = (each: SoonTurn, facts: StartAdvice): Said => ({ ...aboutTurn(each), code: facts.code, text: startAdviceText(facts, asked.owner.units) })
-  const pots = potLives(asked, soon)
+  const pots = mixAdvice(asked, soon)
   const zone = studioZone(asked.owner.zone)
   return soon.flatMap((each) => {
-    const pot = pots(each)
     const newest = Math.max(0, ...(each.group?.films ?? []).filter(film => film.kind !== 'glue-up').map(film => film.endedAt))
     const early = each.turn.step.kind === 'packing' && each.at < newest + packAfterMs
     return [
-      ...pot ? [say(each, pot)] : [],
+      ...pots(each).map(facts => say(each, facts)),
       ...early ? [say(each, { code: 'pack-early', when: clockTime(newest + packAfterMs, { now: asked.now, zone }) })] : [],
     ]
   })
 }
 
-/** How long what is mixed for a turn lasts in its room, where that is not near what the sheet says. */
-function potLives({ db, owner, now }: Asked, soon: readonly SoonTurn[]) {
-  const ids = [...new Set(soon.flatMap(each => each.turn.step.materialVersionId ?? []))]
-  const figures = ids.length === 0 ? [] : db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, ids), eq(materialFigure.name, 'pot life'))).all()
-  const sheets = dryingMaterials(db, owner.id, figures.map(each => each.versionId))
-  const airs = figures.length === 0 ? new Map() : roomAirs(db, owner, now)
-  return ({ turn, at, group }: SoonTurn): StartAdvice | null => {
-    const figure = figures.find(each => each.versionId === turn.step.materialVersionId)
-    const sheet = figure && sheets.get(figure.versionId)
-    const room = airs.get(group?.roomId ?? 0)
-    const air = room && airAt(trackRoom(preparedMaterials.tools, room, at), at)
-    if (!figure || !sheet || !air || air.assumed || !(air.tempC >= -20 && air.tempC <= 60)) return null
-    const minutes = potLifeAt(figure.typical, sheet.reference.tempC, air.tempC)
-    return Math.abs(minutes / figure.typical - 1) < nearSheet ? null : { code: 'pot-life', minutes, sheetMinutes: figure.typical, tempC: air.tempC }
+/** How long what is mixed for a turn lasts in its room, where that is not near what the sheet says, and how often it is mixed for all that is done with it there. */
+function mixAdvice({ db, owner, now }: Asked, soon: readonly SoonTurn[]) {
+  const mixed = soon.filter(({ turn: { step } }) => step.materialVersionId !== null && (step.kind === 'coat' || step.kind === 'glue-up'))
+  const potOf = potsOf(db, owner, [...new Set(mixed.flatMap(each => each.turn.step.materialVersionId ?? []))], roomAirs(db, owner, now), now)
+  const likeWork = ({ turn, group }: SoonTurn) => `${turn.step.materialVersionId} ${turn.step.kind} ${turn.name} ${group?.roomId}`
+  const together = grouped(mixed, likeWork)
+  return (each: SoonTurn): StartAdvice[] => {
+    const pot = potOf(each.turn.step.materialVersionId, each.group?.roomId ?? null)
+    if (!pot) return []
+    const several = severalMixes(pot, together.get(likeWork(each)) ?? [])
+    const isNearSheet = Math.abs(pot.minutes / pot.sheetMinutes - 1) < nearSheet
+    return [
+      ...pot.tempC === null || isNearSheet ? [] : [{ code: 'pot-life', minutes: pot.minutes, sheetMinutes: pot.sheetMinutes, tempC: pot.tempC } as const],
+      ...several ? [several] : [],
+    ]
   }
+}
+
+function severalMixes(pot: Pot, alike: readonly SoonTurn[]): StartAdvice | null {
+  const each = piecesOfMix(pot, Math.max(0, ...alike.map(({ turn }) => turn.pieceMin)))
+  return each === null || each >= alike.length ? null : { code: 'several-mixes', minutes: pot.least, pieces: alike.length, each, mixes: Math.ceil(alike.length / each) }
 }

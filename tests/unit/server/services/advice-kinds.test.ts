@@ -219,6 +219,11 @@ const kinds: Record<AdviceCode | StartAdvice['code'], Kind> = {
     about: 'turn', says: /^At 32 °C what is mixed lasts about 5 min; the sheet says 11\. A deep pot goes off sooner: mix less\.$/,
     wrong: s => resin(s, 32), tamed: s => resin(s, 22),
   },
+  'several-mixes': {
+    // 9 min at the least at 22 C: one tray of 6 minutes, not two.
+    about: 'turn', says: /^What is mixed may go off after 9 min: enough for 1 of these 2\. Mix 2 times\.$/,
+    wrong: s => [22, 22].forEach(tempC => resin(s, tempC)), tamed: s => resin(s, 22),
+  },
   'pack-early': {
     about: 'turn', at: now + 40 * hour, says: /^Wrapped before 10:00 it may print/,
     wrong: s => packed(s, now), tamed: s => packed(s, now - 9 * hour),

@@ -1,4 +1,6 @@
+import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
+import { materialVersion, pieceStep } from '~~/db/schema'
 import type { ActRequest } from '#shared/schemas/act'
 import { namesLeaf } from '#shared/words/leaf'
 import type { Work } from '../../../helpers/advice-work'
@@ -61,6 +63,20 @@ describe('still air for leaf', () => {
     s.tell('air', frame(s, ['lay-leaf']), { kind: 'moving', minutes: 30 })
     expect(s.line('still-air', now + 29 * minute)).toBeDefined()
     expect(s.line('still-air', now + 31 * minute)).toBeUndefined()
+  })
+
+  it('is asked for of what a size at its tack takes, and not of what a glue at its tack joins', () => {
+    // The name of the step says nothing of leaf: only what it waits for does.
+    const named = (s: Work) => s.db.update(pieceStep).set({ name: 'Press it on' }).where(eq(pieceStep.key, 'leaf-sides')).run()
+    const size = atWork()
+    sized(size, moving)
+    named(size)
+    expect(size.line('still-air')?.turnIds).toHaveLength(1)
+    const glue = atWork()
+    sized(glue, moving)
+    named(glue)
+    glue.db.update(materialVersion).set({ kind: 'glue' }).where(eq(materialVersion.kind, 'size')).run()
+    expect(glue.line('still-air')).toBeUndefined()
   })
 
   it('is not asked for before the size is on, nor at other bench work', () => {

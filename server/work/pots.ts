@@ -1,0 +1,34 @@
+import { eq, inArray } from 'drizzle-orm'
+import { materialFigure } from '~~/db/schema'
+import type { studio } from '~~/db/schema'
+import type { Database } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
+import { airAt } from '#shared/air/room'
+import { potLifeAt } from '#shared/drying/pot-life'
+import { trackRoom } from '#shared/drying/tools'
+import type { RoomAir } from '#shared/drying/types'
+
+/** How long a mixed quantity lasts, minutes: usually, and at the least. `tempC`: the warmth it was reckoned for, null where nobody read it and the sheet's stands. */
+export interface Pot { minutes: number, least: number, sheetMinutes: number, tempC: number | null }
+
+/** How long what is mixed of some material editions lasts in the rooms of a studio; null for what does not go off in its pot. `now`: ms UTC. */
+export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>, now: number) {
+  const figures = versionIds.length === 0 ? [] : db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, [...versionIds]), eq(materialFigure.name, 'pot life'))).all()
+  const sheets = dryingMaterials(db, owner.id, figures.map(each => each.versionId))
+  return (versionId: number | null, roomId: number | null): Pot | null => {
+    const figure = figures.find(each => each.versionId === versionId)
+    const sheet = figure && sheets.get(figure.versionId)
+    if (!figure || !sheet) return null
+    const known = airs.get(roomId ?? 0)
+    const air = known && airAt(trackRoom(preparedMaterials.tools, known, now), now)
+    const tempC = air && !air.assumed && air.tempC >= -20 && air.tempC <= 60 ? air.tempC : null
+    const here = (minutes: number) => tempC === null ? minutes : potLifeAt(minutes, sheet.reference.tempC, tempC)
+    return { minutes: here(figure.typical), least: here(figure.low), sheetMinutes: figure.typical, tempC }
+  }
+}
+
+/** How many pieces one mix is enough for; null where it lasts no single one, so that mixing anew is part of its minutes. */
+export function piecesOfMix(pot: Pot, pieceMinutes: number): number | null {
+  return pieceMinutes > 0 && pot.least >= pieceMinutes ? Math.floor(pot.least / pieceMinutes) : null
+}
