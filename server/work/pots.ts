@@ -24,7 +24,7 @@ export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionI
     const air = known && airAt(trackRoom(preparedMaterials.tools, known, now), now)
     const tempC = air && !air.assumed && air.tempC >= -20 && air.tempC <= 60 ? air.tempC : null
     const here = (minutes: number) => tempC === null ? minutes : potLifeAt(minutes, sheet.reference.tempC, tempC)
-    return { minutes: here(figure.typical), least: here(figure.low), sheetMinutes: figure.typical, tempC }
+    return { minutes: here(figure.typical), least: here(figure.low ?? figure.typical), sheetMinutes: figure.typical, tempC }
   }
 }
 

@@ -1,8 +1,7 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
 import { materialFigure, openHours, pieceStep, planEntry, planSession } from '~~/db/schema'
-import { replan } from '~~/server/planning/replan'
-import { searchHere } from '~~/server/planning/search'
+import { atOnce, replan } from '~~/server/planning/replan'
 import { piecesOfMix } from '~~/server/work/pots'
 import { atWork, now } from '../../../helpers/advice-work'
 import { minute } from '../../../helpers/studio'
@@ -21,7 +20,7 @@ function handlesNext(tempC: number) {
 /** How many trays each session of the plan glues, the most first, and minutes from its first member to its last. */
 async function sessionsOf(studio: ReturnType<typeof atWork>) {
   const { db, studioId } = studio
-  expect(await replan(db, studioId, now, searchHere)).toMatchObject({ ok: true })
+  expect(await replan(db, studioId, now, atOnce)).toMatchObject({ ok: true })
   const rows = db.select().from(planSession).all().filter(session => session.family.startsWith('glue-up'))
   return rows.map(({ id, setupMin }) => {
     const own = db.select().from(planEntry).where(eq(planEntry.sessionId, id)).all()
