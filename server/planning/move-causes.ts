@@ -85,7 +85,8 @@ export class MoveCauses {
   /** At its old time what it waits for would not be there yet. */
   private notReady(spot: Spot, depth: number): MoveCause | null {
     const ready = this.compared.ready.get(spot.id)
-    if (!ready || ready.at < spot.was + slack) return null
+    // What may begin by now holds nothing up: only the hour has passed.
+    if (!ready || ready.at <= 0 || ready.at < spot.was + slack) return null
     if (this.shutFrom.get(spot.id) === ready.at) return { code: 'shut room', room: this.roomName(spot.work) ?? '' }
     if (ready.lag.from === null && this.dustFrom.get(spot.id) === ready.at) return { code: 'dust', step: null }
     if (ready.lag.from === null) return this.film('film later', spot, ready.at)

@@ -41,7 +41,8 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const leftOut = follow(new Set([...found.flatMap(each => [...each.unreachable]), ...refusedWork(works, facts)]), works, lags, hands)
   const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
   const known = new Set(planned.flatMap(work => work.turns.map(turn => activityId(turn.id))))
-  const asked = lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from)))
+  const held = lags.filter(lag => known.has(lag.to) && (lag.from === null || lag.from === undefined || known.has(lag.from)))
+  const asked = [...held, ...begunWith(planned, held, facts, zeroAt)]
   const fixed = fixedOf(planned, facts, toCome, hands, zeroAt)
   const reserved = reservedFor(planned, fixed, familyOf)
   const input: PlanInput = {
@@ -144,9 +145,18 @@ function familiesOf(works: readonly StepWork[], toCome: WaitsToCome): NonNullabl
 
 /** No session is longer than what was mixed for it lasts; null where nothing goes off in its pot, or not even one piece long: then mixing is part of each. Whole minutes. */
 function mixLasts({ step, roomId }: StepWork, longest: number, toCome: WaitsToCome): number | null {
-  const pot = toCome.potOf(step.materialVersionId, roomId)
+  const pot = toCome.potOf(step.materialVersionId, roomId, toCome.now)
   return pot === null || piecesOfMix(pot, longest) === null ? null : Math.floor(pot.least)
 }
+
+/** What waits for nothing is ready with its batch: without this a start put off would cost nothing, and a batch without a date would begin on any day. */
+function begunWith(works: readonly StepWork[], lags: readonly LagInput[], facts: PlanFacts, zeroAt: number): LagInput[] {
+  const waits = new Set(lags.map(lag => lag.to))
+  const startsAt = new Map(facts.pieces.map(each => [each.id, each.startsAt]))
+  return works.flatMap(({ step, turns }) => turns.map(turn => activityId(turn.id)).filter(id => !waits.has(id)).map(to => ({ from: null, to, min: releaseOf(startsAt.get(step.pieceId), zeroAt) })))
+}
+
+const releaseOf = (startsAt: number | null | undefined, zeroAt: number) => Math.max(0, minutesFrom(zeroAt, startsAt ?? zeroAt, Math.ceil))
 
 /** One job for each batch: like pieces of one job go through their work as a row. */
 function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): NonNullable<PlanInput['jobs']> {
@@ -154,7 +164,7 @@ function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): N
   const batches = grouped(works, work => pieces.get(work.step.pieceId)?.batchId ?? 0)
   return [...batches].map(([batchId, own]) => {
     const row = pieces.get(own[0]?.step.pieceId ?? 0)
-    return { id: `batch ${batchId}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), release: Math.max(0, minutesFrom(zeroAt, row?.startsAt ?? zeroAt, Math.ceil)), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
+    return { id: `batch ${batchId}`, activities: own.flatMap(work => work.turns.map(turn => activityId(turn.id))), release: releaseOf(row?.startsAt, zeroAt), due: row?.dueAt ? minutesFrom(zeroAt, row.dueAt, Math.floor) : null, weight: row?.weight ?? 1 }
   })
 }
 

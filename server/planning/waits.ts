@@ -46,7 +46,7 @@ export class WaitsToCome {
     this.#benches = benchesOf(db, facts.owner.id, dryingMaterials(db, facts.owner.id, materialsToCome(facts)))
     const airs = roomAirs(db, facts.owner, now)
     this.#airs = airs
-    this.potOf = potsOf(db, facts.owner, materialsToCome(facts), airs, now)
+    this.potOf = potsOf(db, facts.owner, materialsToCome(facts), airs)
     this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
   }

@@ -12,16 +12,16 @@ import type { RoomAir } from '#shared/drying/types'
 /** How long a mixed quantity lasts, minutes: usually, and at the least. `tempC`: the warmth it was reckoned for, null where nobody read it and the sheet's stands. */
 export interface Pot { minutes: number, least: number, sheetMinutes: number, tempC: number | null }
 
-/** How long what is mixed of some material editions lasts in the rooms of a studio; null for what does not go off in its pot. `now`: ms UTC. */
-export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>, now: number) {
+/** How long what is mixed of some material editions at an instant (ms UTC) lasts in the rooms of a studio; null for what does not go off in its pot. */
+export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>) {
   const figures = versionIds.length === 0 ? [] : db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, [...versionIds]), eq(materialFigure.name, 'pot life'))).all()
   const sheets = dryingMaterials(db, owner.id, figures.map(each => each.versionId))
-  return (versionId: number | null, roomId: number | null): Pot | null => {
+  return (versionId: number | null, roomId: number | null, at: number): Pot | null => {
     const figure = figures.find(each => each.versionId === versionId)
     const sheet = figure && sheets.get(figure.versionId)
     if (!figure || !sheet) return null
     const known = airs.get(roomId ?? 0)
-    const air = known && airAt(trackRoom(preparedMaterials.tools, known, now), now)
+    const air = known && airAt(trackRoom(preparedMaterials.tools, known, at), at)
     const tempC = air && !air.assumed && air.tempC >= -20 && air.tempC <= 60 ? air.tempC : null
     const here = (minutes: number) => tempC === null ? minutes : potLifeAt(minutes, sheet.reference.tempC, tempC)
     return { minutes: here(figure.typical), least: here(figure.low ?? figure.typical), sheetMinutes: figure.typical, tempC }

@@ -5,6 +5,7 @@ import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
 import { startServer } from '../helpers/server'
 import type { TestServer } from '../helpers/server'
 import { firstStudio } from '../helpers/sign-in'
+import { answeredText } from '#shared/words/advice-answers'
 import type { Visitor } from '../helpers/sign-in'
 
 const minute = 60_000
@@ -57,9 +58,12 @@ describe('what is to be minded', () => {
     expect(await axeProblems(page)).toEqual([])
     const line = page.getByRole('listitem').filter({ hasText: /^The room is under/ }).first()
     await line.getByRole('button', { name: 'I have seen to it' }).click()
-    await line.waitFor({ state: 'detached' }).catch(() => undefined)
+    await says.waitFor({ state: 'detached' })
+    await visit(page, '/hands')
+    await page.getByText('Cold box').first().waitFor()
+    expect(await says.count()).toBe(0)
     await visit(page, `/pieces/${piece.id}`)
-    await page.getByRole('heading', { name: 'Cold box', level: 1 }).waitFor()
+    await page.getByText(answeredText('seen')).first().waitFor()
     expect(await axeProblems(page)).toEqual([])
     expect(problems).toEqual([])
   })

@@ -31,12 +31,11 @@ export function handlingAdvice(asked: Asked, soon: readonly SoonTurn[]): Said[] 
 
 /** How long what is mixed for a turn lasts in its room, where that is not near what the sheet says, and how often it is mixed for all that is done with it there. */
 function mixAdvice({ db, owner, now }: Asked, soon: readonly SoonTurn[]) {
-  const mixed = soon.filter(({ turn: { step } }) => step.materialVersionId !== null && (step.kind === 'coat' || step.kind === 'glue-up'))
-  const potOf = potsOf(db, owner, [...new Set(mixed.flatMap(each => each.turn.step.materialVersionId ?? []))], roomAirs(db, owner, now), now)
+  const potOf = potsOf(db, owner, [...new Set(soon.flatMap(each => each.turn.step.materialVersionId ?? []))], roomAirs(db, owner, now))
   const likeWork = ({ turn, group }: SoonTurn) => `${turn.step.materialVersionId} ${turn.step.kind} ${turn.name} ${group?.roomId}`
-  const together = grouped(mixed, likeWork)
+  const together = grouped(soon, likeWork)
   return (each: SoonTurn): StartAdvice[] => {
-    const pot = potOf(each.turn.step.materialVersionId, each.group?.roomId ?? null)
+    const pot = potOf(each.turn.step.materialVersionId, each.group?.roomId ?? null, each.at)
     if (!pot) return []
     const several = severalMixes(pot, together.get(likeWork(each)) ?? [])
     const isNearSheet = Math.abs(pot.minutes / pot.sheetMinutes - 1) < nearSheet
