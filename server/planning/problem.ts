@@ -7,7 +7,6 @@ import { dustApart, dustKeptOff } from '~~/server/planning/dust'
 import { openWithout, reservedFor } from '~~/server/planning/reserved'
 import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import type { WaitsToCome } from '~~/server/planning/waits'
-import { piecesOfMix } from '~~/server/work/pots'
 import { minutesFrom } from '#shared/drying/waits'
 import { grouped } from '#shared/grouped'
 import { freely } from '#shared/planning/objective'
@@ -51,7 +50,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     lags: asked,
     rests: restsOf(planned, facts, lags, known),
     apart: [...dustApart(planned, toCome), ...vapourApart(planned, facts, toCome)],
-    families: familiesOf(planned, toCome),
+    families: familiesOf(planned),
     jobs: jobsOf(planned, facts, zeroAt),
     fixed,
     horizon: horizonDays * 24 * 60,
@@ -134,19 +133,17 @@ function restsOf(works: readonly StepWork[], facts: PlanFacts, lags: readonly La
 /** Like work in one room is set up for and cleaned up after once. */
 export const familyOf = ({ step, roomId }: StepWork) => [step.kind, step.materialVersionId ?? step.name, `${step.hands} hands`, step.mayRunOver ? 'may run over' : '', roomId ?? ''].join(' | ')
 
-function familiesOf(works: readonly StepWork[], toCome: WaitsToCome): NonNullable<PlanInput['families']> {
-  return [...grouped(works.filter(({ step }) => step.setupMin + step.cleanMin > 0), familyOf)].flatMap(([id, own]) => {
-    const members = own.flatMap(work => work.turns.filter(turn => turn.kind === 'work' && turn.status === 'waiting'))
-    if (members.length === 0) return []
-    const most = (figure: 'setupMin' | 'cleanMin') => Math.max(...own.map(work => work.step[figure]))
-    return [{ id, setup: most('setupMin'), cleanup: most('cleanMin'), members: members.map(turn => activityId(turn.id)), mode: 'row' as const, maxMinutes: mixLasts(own[0]!, Math.max(1, ...members.map(turn => turn.minutes)), toCome) }]
-  })
-}
-
-/** No session is longer than what was mixed for it lasts; null where nothing goes off in its pot, or not even one piece long: then mixing is part of each. Whole minutes. */
-function mixLasts({ step, roomId }: StepWork, longest: number, toCome: WaitsToCome): number | null {
-  const pot = toCome.potOf(step.materialVersionId, roomId, toCome.now)
-  return pot === null || piecesOfMix(pot, longest) === null ? null : Math.floor(pot.least)
+function familiesOf(works: readonly StepWork[]): NonNullable<PlanInput['families']> {
+  const families = new Map<string, { setup: number, cleanup: number, members: string[] }>()
+  for (const work of works) {
+    if (work.step.setupMin + work.step.cleanMin === 0) continue
+    const known = families.get(familyOf(work)) ?? { setup: 0, cleanup: 0, members: [] }
+    known.setup = Math.max(known.setup, work.step.setupMin)
+    known.cleanup = Math.max(known.cleanup, work.step.cleanMin)
+    known.members.push(...work.turns.filter(turn => turn.kind === 'work' && turn.status === 'waiting').map(turn => activityId(turn.id)))
+    families.set(familyOf(work), known)
+  }
+  return [...families].filter(([, family]) => family.members.length > 0).map(([id, family]) => ({ id, ...family, mode: 'row' as const }))
 }
 
 /** What waits for nothing is ready with its batch: without this a start put off would cost nothing, and a batch without a date would begin on any day. */

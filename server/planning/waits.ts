@@ -1,7 +1,6 @@
 import { airOf, roomAirs } from '~~/server/work/air'
 import { benchesOf } from '~~/server/work/benches'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
-import { potsOf } from '~~/server/work/pots'
 import { materialsToCome } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { readShut } from '~~/server/planning/vapour'
@@ -37,8 +36,6 @@ export class WaitsToCome {
   readonly #films = new Map<string, FilmToCome | null>()
   readonly #clockOf: (roomId: number | null) => RoomClock
   readonly #airs: Map<number, RoomAir>
-  /** How long what is mixed of an edition lasts in a room. */
-  readonly potOf: ReturnType<typeof potsOf>
   /** Rooms that nobody enters till somebody opens them. */
   readonly shut: ReadonlyMap<number, ShutRoom>
 
@@ -46,7 +43,6 @@ export class WaitsToCome {
     this.#benches = benchesOf(db, facts.owner.id, dryingMaterials(db, facts.owner.id, materialsToCome(facts)))
     const airs = roomAirs(db, facts.owner, now)
     this.#airs = airs
-    this.potOf = potsOf(db, facts.owner, materialsToCome(facts), airs)
     this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
   }
