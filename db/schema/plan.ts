@@ -73,7 +73,7 @@ export const planSession = sqliteTable('plan_session', {
   setupMin: integer('setup_min').notNull(),
 }, t => [studioKey(t), belongsTo(t, t.planId, plan), within(t, t.roomId, room)])
 
-/** `dueAt` is the first planned start that nobody has spoken to: re-planning carries it on, so that silence stays visible. `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; `firstFew` of the session can still be done from `lastStartFewAt`. `readyAt` is when what it waits for lets it begin; `toldAt` the start that people last heard of. */
+/** `dueAt` is the first planned start that nobody has spoken to: re-planning carries it on, so that silence stays visible. `lastStartAt` is counted back from a window's early end by set-up and minutes per piece; of the session as many as `firstFew` can still be done until `lastStartFewAt`. `readyAt` is when what it waits for lets it begin; `toldAt` the start that people last heard of. */
 export const planEntry = sqliteTable('plan_entry', {
   studioId: studioColumn(),
   planId: integer('plan_id').notNull(),

@@ -43,7 +43,7 @@ export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts,
 /** While all can still be done, a third of them is told too: for those there is longer time. */
 const share = 3
 
-/** The last moment for all, and for the first few: as many as can still be done, or a third while all can. */
+/** The last moment for all, and for some of them: as many as can still be done, or a third while all can. Those are the ones whose windows shut last. */
 function forSome(windows: readonly LastWindow[], count: number, step: StudioProblem['works'][number]['step'], now: number, open: readonly Interval[]): LastStart {
   const chosen = [...windows].sort((a, b) => b.shuts - a.shuts).slice(0, count)
   const found = lastStart({ shuts: chosen.map(each => each.shuts), opens: chosen.map(each => each.opens), setup: step.setupMin, minutes: step.pieceMin, now, open })

@@ -5,7 +5,7 @@ import { groupMoment } from '#shared/verdict/next'
 import type { NextMoment, StartBy } from '#shared/verdict/next'
 import { beginMoment, startMoment } from '#shared/verdict/piece'
 import { callWords } from '#shared/words/calls'
-import { firstFewText, momentText } from '#shared/words/moments'
+import { fewText, momentText } from '#shared/words/moments'
 import { lowerFirst } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 import { lastOpenMoment, nightAfter } from './hours'
@@ -80,10 +80,10 @@ export function lastMoments(state: CallState, now: number): WantedReminder[] {
   })
 }
 
-/** "by 14:35 for the first 4", where as many could still be done after the last moment for all. */
+/** "by 14:35 for 4 of them", where as many could still be done after the last moment for all. */
 function fewOf({ turns }: Group, start: StartBy, clock: Clock): string | null {
   const plan = turns.map(({ read }) => read.turn.plan).find(each => each && each.lastStartFewAt !== null && each.lastStartFewAt > start.at)
-  return plan && plan.firstFew !== null && plan.lastStartFewAt !== null ? firstFewText(plan.firstFew, plan.lastStartFewAt, clock) : null
+  return plan && plan.firstFew !== null && plan.lastStartFewAt !== null ? fewText(plan.firstFew, plan.lastStartFewAt, clock) : null
 }
 
 /** Half an hour before; for a moment in the night, half an hour before the studio shuts. */

@@ -14,7 +14,7 @@ export const callSettings = {
   which: 'Which calls',
   byMail: (address: string) => `Every call that is on also goes by mail to ${address}.`,
   kinds: {
-    'last moment to start': { label: 'Last moment to start', hint: 'Half an hour before a window shuts for all of them, and again for the first few.' },
+    'last moment to start': { label: 'Last moment to start', hint: 'Half an hour before a window shuts for all of them, and again for as many as can still be done.' },
     'ready': { label: 'Ready', hint: 'When the next step over a film is due.' },
     'before you leave': { label: 'Before you leave', hint: 'Half an hour before the studio shuts: what shuts overnight, what is outdoors, heating, lids, glue pot, rags.' },
     'check the room': { label: 'Time to check the spray room', hint: 'When a shut room is not expected to hold much vapour any more. It stays shut until somebody has looked.' },

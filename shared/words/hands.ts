@@ -8,7 +8,7 @@ import type { Hold, MilestoneName } from '#shared/terms'
 import type { ReasonCode } from '#shared/drying/types'
 import type { StartBy } from '#shared/verdict/next'
 import { groupNames, listText } from '#shared/words/group'
-import { aboutText, beginReason, firstFewText, late, momentReason, startByText } from '#shared/words/moments'
+import { aboutText, beginReason, fewText, late, momentReason, startByText } from '#shared/words/moments'
 import { lowerFirst, milestoneText, titled } from '#shared/words/steps'
 import { asSentence, limitText, predictionReason } from '#shared/words/verdict'
 
@@ -111,11 +111,11 @@ export function jobMoment(job: Job, film: FilmState | null, clock: Clock): strin
 
 /** The last moment, as every screen says it, with its reason; and how many of the session's pieces this job is about. */
 function startOf(moment: StartBy, job: Job, clock: Clock): string {
-  const why = momentReason(moment, clock)
+  const why = momentReason(moment, clock, job.pieces.flatMap(each => each.turn.begin.till ?? []))
   const here = moment.pieces !== null && moment.pieces.all > job.pieces.length ? `, ${job.pieces.length} of them here` : ''
   const waits = job.may || job.because.code === 'role' ? [] : [beginReason(job.because)]
   const plan = job.pieces.map(each => each.turn.turn.plan).find(each => each && each.firstFew !== null && each.lastStartFewAt !== null && each.lastStartFewAt > moment.at)
-  const few = moment.at >= clock.now && plan?.firstFew && plan.lastStartFewAt ? `, ${firstFewText(plan.firstFew, plan.lastStartFewAt, clock)}` : ''
+  const few = moment.at >= clock.now && plan?.firstFew && plan.lastStartFewAt ? `, ${fewText(plan.firstFew, plan.lastStartFewAt, clock)}` : ''
   return asSentence([`${startByText(moment, clock)}${few}${here}`, ...why ? [why] : [], ...waits].join('; '))
 }
 
@@ -136,7 +136,7 @@ export function todayText({ pieces, allAt, few, shutsAt }: StillToday, clock: Cl
   const shut = clockTime(shutsAt, clock)
   // Closing is no prediction: it is told as finely as it is known.
   if (allAt !== null) return `Start by ${roughTime(allAt, clock, 'down', 0)} to ${pieces === 1 ? 'finish' : pieces === 2 ? 'do both' : `do all ${pieces}`} before ${shut}.`
-  return few === null ? 'There is no longer time for it today.' : `There is no longer time for all ${pieces} today: start ${firstFewText(few.count, few.at, clock, 0)}.`
+  return few === null ? 'There is no longer time for it today.' : `There is no longer time for all ${pieces} today: start ${fewText(few.count, few.at, clock, 0)}.`
 }
 
 /** "25 min" of attended work for the whole job. */

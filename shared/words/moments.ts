@@ -6,9 +6,12 @@ import type { NextMoment, StartBy } from '#shared/verdict/next'
 import type { Clock } from '#shared/time'
 import type { DoubtCause, Hold, StepKind, StepStatus } from '#shared/terms'
 
+const someText = (count: number) => (count === 1 ? 'one' : `${count}`)
+
 function piecesText(pieces: StartBy['pieces']): string {
   if (pieces === null || pieces.all === 1) return ''
-  if (pieces.some < pieces.all) return ` to do the first ${pieces.some === 1 ? '' : `${pieces.some} `}of ${pieces.all}`
+  // Which ones is not said: those that can still be done are not the first, their windows shut last.
+  if (pieces.some < pieces.all) return ` to do ${someText(pieces.some)} of ${pieces.all}`
   return pieces.all === 2 ? ' to do both' : ` to do all ${pieces.all}`
 }
 
@@ -22,8 +25,8 @@ function startText(start: StartBy, clock: Clock): string {
   return start.at < clock.now ? `${late}${noun} was to start ${byText(start, clock)}` : `start ${noun} ${byText(start, clock)}`
 }
 
-/** "by 14:35 for the first 4": as many as can still be done when the last moment for all is over. */
-export const firstFewText = (count: number, at: number, clock: Clock, doubtMs?: number) => `by ${roughTime(at, clock, 'down', doubtMs)} for the first${count === 1 ? '' : ` ${count}`}`
+/** "by 14:35 for 4 of them": as many as can still be done when the last moment for all is over. */
+export const fewText = (count: number, at: number, clock: Clock, doubtMs?: number) => `by ${roughTime(at, clock, 'down', doubtMs)} for ${someText(count)} of them`
 
 /** "start by 14:35 to do both", where the line says already what. */
 export function startByText(start: StartBy, clock: Clock): string {
@@ -74,11 +77,17 @@ export function momentText(moment: NextMoment, clock: Clock): string {
   }
 }
 
-/** Why hands must start so early: "the window shuts at 15:05", or null. */
-export function momentReason(moment: NextMoment, clock: Clock): string | null {
+/**
+ * Why hands must start so early: "the window shuts at 15:05", or null. Pieces of one session may have windows of their own, so it says whose it names.
+ * @param shuts when the windows shut that a line for several pieces is about, ms UTC; none given: the line is about one piece
+ */
+export function momentReason(moment: NextMoment, clock: Clock, shuts: readonly number[] = []): string | null {
   if (moment.kind !== 'start by' || moment.shutsAt === null) return null
-  const time = roughTime(moment.shutsAt, clock, 'down')
-  return moment.shutsAt <= clock.now ? `the window shut at ${time}` : `the window shuts at ${time}`
+  const said = (at: number) => roughTime(at, clock, 'down')
+  const time = said(moment.shutsAt)
+  const alone = shuts.length === 0 && moment.pieces !== null && moment.pieces.all > 1
+  const window = alone ? 'this one’s window' : shuts.some(at => said(at) !== time) ? 'the first window' : 'the window'
+  return `${window} ${moment.shutsAt <= clock.now ? 'shut' : 'shuts'} at ${time}`
 }
 
 const notWaiting: Record<StepStatus, string> = {

@@ -27,13 +27,13 @@ describe('whether it can still be done today', () => {
   it('counts back from closing for all', () => expect(says(job(4), ten)).toBe('Start by 15:30 to do all 4 before 17:00.'))
   it('names one and two as one says them', () => expect([says(job(1), ten), says(job(2), ten)]).toEqual(['Start by 16:30 to finish before 17:00.', 'Start by 16:10 to do both before 17:00.']))
   // At 16:00 sixty minutes are left: 10 and 2 x 20 fit, begun by 16:10; three would have wanted 15:50.
-  it('tells as many as can still be done once all cannot', () => expect(says(job(4), ten + 360 * minute)).toBe('There is no longer time for all 4 today: start by 16:10 for the first 2.'))
+  it('tells as many as can still be done once all cannot', () => expect(says(job(4), ten + 360 * minute)).toBe('There is no longer time for all 4 today: start by 16:10 for 2 of them.'))
   it('says so when there is no time for any', () => expect(says(job(4), ten + 400 * minute)).toBe('There is no longer time for it today.'))
   // Ready at 16:20: set up at 16:10, two are done by 17:00; three would want till 17:20.
   it('waits for what is drying', () => {
     const wet = job(4)
     for (const piece of wet.pieces) Object.assign(piece.turn.begin, { may: false, from: ten + 380 * minute })
-    expect(says(wet, ten)).toBe('There is no longer time for all 4 today: start by 16:10 for the first 2.')
+    expect(says(wet, ten)).toBe('There is no longer time for all 4 today: start by 16:10 for 2 of them.')
   })
   it('is silent of other days, of what a window presses, and where nobody works', () => {
     expect(stillToday(job(2, { section: 'days' }), hours, ten)).toBeNull()

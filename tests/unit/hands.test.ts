@@ -193,9 +193,20 @@ describe('times and strips', () => {
 })
 
 describe('the last moment of a job', () => {
-  it('is told for all and for the first few', () => {
+  it('is told for all and for as many as can still be done', () => {
     const plan = planAt(now + 10 * minute, { sessionSize: 3, lastStartAt: now + 20 * minute, firstFew: 1, lastStartFewAt: now + 50 * minute })
     const [job] = jobs([1, 2, 3].map(id => piece(id, [turn(id, now - hour, { plan })])))
-    expect(job && jobMoment(job, null, clock)).toBe('Start by 10:20 to do all 3, by 10:50 for the first.')
+    expect(job && jobMoment(job, null, clock)).toBe('Start by 10:20 to do all 3, by 10:50 for one of them.')
+  })
+
+  it('names the first window as the first where the others shut later', () => {
+    const shutting = (id: number, till: number) => {
+      const plan = planAt(now + 10 * minute, { sessionSize: 2, lastStartAt: now + 20 * minute })
+      const waits = [{ step: 'First varnish', status: 'resting' as const, milestone: 'ready-to-recoat' as const, risk: 'p90' as const, windowed: true, films: [{ moment: rung(now - hour), windows: [{ opensAt: now - hour, shutsAt: till, fromStart: false }], hold: null }] }]
+      return piece(id, [turn(id, now - hour, { plan, waits })])
+    }
+    const said = (tills: number[]) => jobs(tills.map((till, i) => shutting(i + 1, till))).map(job => jobMoment(job, null, clock))
+    expect(said([now + 50 * minute, now + 80 * minute])).toEqual(['Start by 10:20 to do both; the first window shuts at 10:50.'])
+    expect(said([now + 50 * minute, now + 50 * minute])).toEqual(['Start by 10:20 to do both; the window shuts at 10:50.'])
   })
 })

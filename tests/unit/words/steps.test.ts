@@ -16,12 +16,20 @@ describe('next moments in words', () => {
   it('says the last moment to start, and the window only as its reason', () => {
     expect(momentText(start(2, 2), clock)).toBe('start “Second varnish” by 14:35 to do both')
     expect(momentText(start(12, 12), clock)).toBe('start “Second varnish” by 14:35 to do all 12')
-    expect(momentText(start(4, 12), clock)).toBe('start “Second varnish” by 14:35 to do the first 4 of 12')
-    expect(momentText(start(1, 2), clock)).toBe('start “Second varnish” by 14:35 to do the first of 2')
+    expect(momentText(start(4, 12), clock)).toBe('start “Second varnish” by 14:35 to do 4 of 12')
+    expect(momentText(start(1, 2), clock)).toBe('start “Second varnish” by 14:35 to do one of 2')
     expect(momentText(start(1, 1), clock)).toBe('start “Second varnish” by 14:35')
     expect(momentText(start(2, 2), { ...clock, now: hour(15) })).toBe('late: “Second varnish” was to start by 14:35 to do both')
-    expect(momentReason(start(2, 2), clock)).toBe('the window shuts at 15:05')
-    expect(momentReason(start(2, 2), { ...clock, now: hour(16) })).toBe('the window shut at 15:05')
+    expect(momentReason(start(1, 1), clock)).toBe('the window shuts at 15:05')
+    expect(momentReason(start(1, 1), { ...clock, now: hour(16) })).toBe('the window shut at 15:05')
+  })
+
+  it('says whose window it names where several are started together', () => {
+    const at = hour(15) + 5 * minute
+    expect(momentReason(start(12, 12), clock)).toBe('this one’s window shuts at 15:05')
+    expect(momentReason(start(12, 12), clock, [at, at, at])).toBe('the window shuts at 15:05')
+    expect(momentReason(start(12, 12), clock, [at, at + 25 * minute])).toBe('the first window shuts at 15:05')
+    expect(momentReason(start(4, 12), { ...clock, now: hour(15.25) }, [at, at + 25 * minute])).toBe('the first window shut at 15:05')
   })
 
   it('says what may begin, now or from when', () => {

@@ -11,7 +11,7 @@ describe('the last moment to start', () => {
   const withPlan = () => {
     const test = openStudio()
     const { turns, coatAct } = startBatch(test, 12)
-    // Noon is 12:00 in London: all 12 by 13:50, the first 4 by 14:35.
+    // Noon is 12:00 in London: all 12 by 13:50, 4 of them by 14:35.
     planTurns(test, turns, { startsAt: noon + minutes(60), lastStartAt: noon + minutes(110), firstFew: 4, lastStartFewAt: noon + minutes(155) })
     return { test, turns, coatAct }
   }
@@ -21,14 +21,14 @@ describe('the last moment to start', () => {
     // The words are those of the moment it is made: 13:20.
     const [call, ...more] = wanted(test, noon + minutes(80), 'last moment to start')
     expect(more).toEqual([])
-    expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Ledgers, 12 pieces. Start “Second coat” by 13:50 to do all 12, by 14:35 for the first 4.' })
+    expect(call).toMatchObject({ stage: 'all', dueAt: noon + minutes(80), title: 'Start by 13:50', body: 'Ledgers, 12 pieces. Start “Second coat” by 13:50 to do all 12, by 14:35 for 4 of them.' })
   })
 
-  it('comes again when only the first few can still be done', () => {
+  it('comes again when only some can still be done', () => {
     const { test } = withPlan()
     const [call] = wanted(test, noon + minutes(111), 'last moment to start')
     // Half an hour before 14:35 is 14:05, later than 13:50.
-    expect(call).toMatchObject({ stage: 'first few', dueAt: noon + minutes(125), body: 'Ledgers, 12 pieces. There is no longer time for all 12. Start “Second coat” by 14:35 to do the first 4 of 12.' })
+    expect(call).toMatchObject({ stage: 'first few', dueAt: noon + minutes(125), body: 'Ledgers, 12 pieces. There is no longer time for all 12. Start “Second coat” by 14:35 to do 4 of 12.' })
     expect(wanted(test, noon + minutes(156), 'last moment to start')).toEqual([])
   })
 
