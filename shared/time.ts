@@ -23,6 +23,30 @@ const asUtc = (date: string, minutes: number) => Date.parse(`${date}T00:00:00Z`)
 
 const weekdayAt = (utc: number) => (Math.floor(utc / dayMs) + 3) % 7 + 1
 
+/** Days whose offsets a zone keeps at most: a plan looks ahead for less. */
+const mostDaysKept = 1000
+
+/**
+ * The same answers with one question to the formatter for most days: it takes microseconds, and a plan asks thousands of times. A day (of UTC)
+ * that begins and ends alike has one offset all through; on the others each instant is asked about.
+ */
+function offsetByDay(asked: (at: number) => number): (at: number) => number {
+  const starts = new Map<number, number>()
+  const startOf = (day: number) => {
+    const known = starts.get(day)
+    if (known !== undefined) return known
+    if (starts.size >= mostDaysKept) starts.clear()
+    const found = asked(day * dayMs)
+    starts.set(day, found)
+    return found
+  }
+  return (at) => {
+    const day = Math.floor(at / dayMs)
+    const begins = startOf(day)
+    return begins === startOf(day + 1) ? begins : asked(at)
+  }
+}
+
 /**
  * The zone of a studio.
  * @param name IANA name, "Europe/Lisbon"
@@ -33,12 +57,13 @@ export function studioZone(name: string): StudioZone {
     timeZone: name, calendar: 'gregory', numberingSystem: 'latn', hourCycle: 'h23',
     year: 'numeric', month: '2-digit', day: '2-digit', hour: '2-digit', minute: '2-digit', second: '2-digit',
   })
-  const offset = (at: number) => {
+  const asked = (at: number) => {
     const part: Partial<Record<Intl.DateTimeFormatPartTypes, string>> = {}
     for (const { type, value } of format.formatToParts(at)) part[type] = value
     const shown = Date.parse(`${part.year}-${part.month}-${part.day}T${part.hour}:${part.minute}:${part.second}Z`)
     return shown - Math.floor(at / 1000) * 1000
   }
+  const offset = offsetByDay(asked)
   const wall = (at: number) => {
     const shown = at + offset(at)
     const iso = new Date(shown).toISOString()

@@ -1,7 +1,7 @@
 import type { Milestone } from '#shared/drying/types'
 import type { Mixture } from '#shared/drying/mixture'
 import { mixtureQuantile, normalPoint } from '#shared/drying/mixture'
-import { density, normal, normalQuantile } from '#shared/drying/normal'
+import { density, normal, normalQuantile, normalWithBell, rootTwoPi } from '#shared/drying/normal'
 
 /** One side of a 10-90 % band, in standard deviations. */
 export const bandZ = 1.2816
@@ -62,16 +62,20 @@ export function probability(x: number, doubt: RungDoubt, extra: number): { p: nu
   const kink = Math.min(reach, Math.max(-reach, -x))
   let p = 0
   let slope = 0
-  for (const [from, to] of [[-reach, (kink - reach) / 2], [(kink - reach) / 2, kink], [kink, (kink + reach) / 2], [(kink + reach) / 2, reach]] as const) {
+  for (let panel = 0; panel < 4; panel++) {
+    const from = panel === 0 ? -reach : panel === 1 ? (kink - reach) / 2 : panel === 2 ? kink : (kink + reach) / 2
+    const to = panel === 0 ? (kink - reach) / 2 : panel === 1 ? kink : panel === 2 ? (kink + reach) / 2 : reach
     const half = (to - from) / 2
     if (half <= 0) continue
     const middle = (from + to) / 2
     for (let i = 0; i < 10; i++) {
       const theta = middle + half * (i < 5 ? nodes[i]! : -nodes[i - 5]!)
       const s = x + theta > 0 ? late : early
-      const weight = half * weights[i % 5]! * density(theta / tau) / tau
-      p += weight * normal((x + theta) / s)
-      slope += weight * density((x + theta) / s) / s
+      const z = (x + theta) / s
+      const bell = Math.exp(-z * z / 2)
+      const weight = half * weights[i < 5 ? i : i - 5]! * density(theta / tau) / tau
+      p += weight * normalWithBell(z, bell)
+      slope += weight * bell / rootTwoPi / s
     }
   }
   return { p, slope }
@@ -114,11 +118,11 @@ export interface QuantileTable {
   learned?: RungLearned & { scale: SheetScale }
 }
 
-/** Builds the table: some hundreds of quantiles, each starting from its neighbour. */
+/** Builds the table: some hundreds of quantiles, each starting where the two before it point. */
 export function quantileTable(doubt: RungDoubt): QuantileTable {
   const values = chances.map((p) => {
     const row = new Float64Array(extraSteps + 1)
-    for (let i = 0; i <= extraSteps; i++) row[i] = quantile(p, doubt, i * extraStep, i > 0 ? row[i - 1] : undefined)
+    for (let i = 0; i <= extraSteps; i++) row[i] = quantile(p, doubt, i * extraStep, i > 1 ? 2 * row[i - 1]! - row[i - 2]! : row[i - 1])
     return row
   })
   return { doubt, values }

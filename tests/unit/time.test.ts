@@ -32,6 +32,19 @@ describe('local date and time to instant and back', () => {
     expect(fromLocal('2026-04-05', 150, south)).toBe(at('2026-04-04T13:30:00Z'))
   })
 
+  it('tells the same offset however it is asked, over clock changes and over more days than it keeps', () => {
+    const shown = (name: string, instant: number) => Date.parse(`${new Date(instant).toLocaleString('sv', { timeZone: name }).replace(' ', 'T')}Z`)
+    for (const zone of [north, south, midnight]) {
+      fc.assert(fc.property(fc.integer({ min: Date.UTC(2020, 0) / minute, max: Date.UTC(2032, 0) / minute }).map(each => each * minute), (instant) => {
+        expect(instant + zone.offset(instant)).toBe(shown(zone.name, instant))
+      }), { numRuns: 2000 })
+      // The hours about every change of 2026: each minute on its own side.
+      for (const change of ['2026-03-29T01:00Z', '2026-10-25T01:00Z', '2026-04-04T14:00Z', '2026-09-26T14:00Z', '2026-09-06T04:00Z']) {
+        for (let off = -2; off <= 2; off++) expect(at(change) + off * minute + zone.offset(at(change) + off * minute)).toBe(shown(zone.name, at(change) + off * minute))
+      }
+    }
+  })
+
   it('knows days of 23 and 25 hours', () => {
     const length = (date: string, zone: typeof north) => (localDay(date, zone).to - localDay(date, zone).from) / hours
     expect([length('2026-03-29', north), length('2026-10-25', north), length('2026-06-01', north)]).toEqual([23, 25, 24])
