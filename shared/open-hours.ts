@@ -18,7 +18,8 @@ export function openSpans(hours: OpenHours, zone: StudioZone, fromAt: number, to
   const spans: Span[] = []
   for (let date = localDate(fromAt, zone); fromLocal(date, 0, zone) < toAt; date = addDays(date, 1)) {
     if (hours.closed.some(closure => closure.fromDate <= date && date <= closure.toDate)) continue
-    const today = hours.open.filter(each => each.weekday === weekdayOf(date)).sort((a, b) => a.fromMin - b.fromMin)
+    const weekday = weekdayOf(date)
+    const today = hours.open.filter(each => each.weekday === weekday).sort((a, b) => a.fromMin - b.fromMin)
     spans.push(...today.map(each => ({ fromAt: fromLocal(date, each.fromMin, zone), toAt: fromLocal(date, each.toMin, zone) })))
   }
   return spans.filter(span => span.toAt > fromAt && span.fromAt < toAt)

@@ -1,4 +1,5 @@
 import type { WaitsToCome } from '~~/server/planning/waits'
+import type { FactIndex } from '~~/server/planning/fact-index'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { metAt, minutesFrom } from '#shared/drying/waits'
 import type { PlanInput } from '#shared/planning/problem'
@@ -25,21 +26,21 @@ export interface StepWork { step: Step, turns: TurnRow[], roomId: number | null 
 export interface LagsOfPiece { lags: LagInput[], untested: Set<number>, unreachable: Set<number> }
 
 /** Turns the links of one piece into lags between its turns, with films that lie already as fixed moments. */
-export function lagsOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, zeroAt: number): LagsOfPiece {
+export function lagsOf(works: readonly StepWork[], facts: Pick<PlanFacts, 'aside'>, index: FactIndex, toCome: WaitsToCome, zeroAt: number): LagsOfPiece {
   const found: LagsOfPiece = { lags: [], untested: new Set(), unreachable: new Set() }
   const byStep = new Map(works.map(work => [work.step.id, work]))
   for (const work of works) {
-    inside(found, work, facts, toCome, zeroAt)
-    for (const link of facts.links.filter(each => each.toStepId === work.step.id)) {
+    inside(found, work, index, toCome, zeroAt)
+    for (const link of index.links.get(work.step.id) ?? []) {
       const first = firstWork(work)
       if (!first) continue
       const before = byStep.get(link.fromStepId)
       if (facts.aside.has(link.fromStepId)) found.unreachable.add(first.id)
-      else if (before?.turns.some(turn => turn.kind === 'work')) between(found, before, first, link, facts, toCome)
+      else if (before?.turns.some(turn => turn.kind === 'work')) between(found, before, first, link, index, toCome)
       else {
         // A film may lie already while looks at it are still to come.
         follow(found, before?.turns ?? [], first)
-        lying(found, link.fromStepId, first, link, facts, zeroAt)
+        lying(found, link.fromStepId, first, link, index, zeroAt)
       }
     }
   }
@@ -56,52 +57,51 @@ function follow(found: LagsOfPiece, before: readonly TurnRow[], first: TurnRow) 
 }
 
 /** From a step with coats still to come. */
-function between(found: LagsOfPiece, before: StepWork, first: TurnRow, link: Asked, facts: PlanFacts, toCome: WaitsToCome) {
+function between(found: LagsOfPiece, before: StepWork, first: TurnRow, link: Asked, index: FactIndex, toCome: WaitsToCome) {
   const film = link.milestone !== null || link.windowed
   follow(found, before.turns.filter(turn => turn.kind !== 'work' || !film), first)
   const coat = [...before.turns].reverse().find(turn => turn.kind === 'work')
   if (!film || !coat) return
   const { minutes, promised, windows } = toCome.wait(before.step, before.roomId, link.milestone, link.risk, link.windowed)
-  add(found, first, activityId(coat.id), minutes, promised, windows, recoveryOf(before.step.materialVersionId, facts), { step: before.step, roomId: before.roomId, coatId: null, milestone: link.milestone, windowed: link.windowed, least: 0 })
+  add(found, first, activityId(coat.id), minutes, promised, windows, recoveryOf(before.step.materialVersionId, index), { step: before.step, roomId: before.roomId, coatId: null, milestone: link.milestone, windowed: link.windowed, least: 0 })
 }
 
 /** From a film that lies already: its times are instants. */
-function lying(found: LagsOfPiece, fromStepId: number, first: TurnRow, link: Asked, facts: PlanFacts, zeroAt: number) {
-  const film = facts.films.filter(each => each.stepId === fromStepId).at(-1)
+function lying(found: LagsOfPiece, fromStepId: number, first: TurnRow, link: Asked, index: FactIndex, zeroAt: number) {
+  const film = index.film.get(fromStepId)
   if (!film || (link.milestone === null && !link.windowed)) return
-  const rungs = facts.rungs.filter(each => each.coatId === film.coatId).map(each => ({ ...each, name: each.milestone }))
-  const { at, promised } = metAt(rungs, link.milestone, link.risk, film.endedAt)
-  const windows = link.windowed ? facts.windows.filter(each => each.coatId === film.coatId).flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(zeroAt, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(zeroAt, shutsAt, Math.floor)]])) : []
-  add(found, first, null, at === null ? null : minutesFrom(zeroAt, at, Math.ceil), promised, windows, recoveryOf(film.versionId, facts), { step: null, roomId: null, coatId: film.coatId, milestone: link.milestone, windowed: link.windowed, least: 0 })
+  const { at, promised } = metAt(index.rungs(film.coatId), link.milestone, link.risk, film.endedAt)
+  const windows = link.windowed ? index.windows(film.coatId).flatMap(({ opensAt, shutsAt }): [number, number | null][] => (opensAt === null ? [] : [[minutesFrom(zeroAt, opensAt, Math.ceil), shutsAt === null ? null : minutesFrom(zeroAt, shutsAt, Math.floor)]])) : []
+  add(found, first, null, at === null ? null : minutesFrom(zeroAt, at, Math.ceil), promised, windows, recoveryOf(film.versionId, index), { step: null, roomId: null, coatId: film.coatId, milestone: link.milestone, windowed: link.windowed, least: 0 })
 }
 
 /** Inside one step: the coats of a round, the looks inside a rest, the release from clamps. */
-function inside(found: LagsOfPiece, work: StepWork, facts: PlanFacts, toCome: WaitsToCome, zeroAt: number) {
+function inside(found: LagsOfPiece, work: StepWork, index: FactIndex, toCome: WaitsToCome, zeroAt: number) {
   const coats = work.turns.filter(turn => turn.kind === 'work')
   const again: Asked = { milestone: 'ready-to-recoat', risk: 'p90', windowed: true }
   const first = coats[0]
-  if (first && work.step.status === 'resting') lying(found, work.step.id, first, again, facts, zeroAt)
-  for (const [index, coat] of coats.entries()) {
-    const before = coats[index - 1]
+  if (first && work.step.status === 'resting') lying(found, work.step.id, first, again, index, zeroAt)
+  for (const [place, coat] of coats.entries()) {
+    const before = coats[place - 1]
     if (!before) continue
     const { minutes, promised, windows } = toCome.wait(work.step, work.roomId, 'ready-to-recoat', 'p90', true)
     const overnight = coat.day > before.day ? aNight : 0
-    add(found, coat, activityId(before.id), minutes === null ? null : Math.max(minutes, overnight), promised, windows, recoveryOf(work.step.materialVersionId, facts), { step: work.step, roomId: work.roomId, coatId: null, milestone: 'ready-to-recoat', windowed: true, least: overnight })
+    add(found, coat, activityId(before.id), minutes === null ? null : Math.max(minutes, overnight), promised, windows, recoveryOf(work.step.materialVersionId, index), { step: work.step, roomId: work.roomId, coatId: null, milestone: 'ready-to-recoat', windowed: true, least: overnight })
   }
   const last = coats[coats.length - 1]
   for (const turn of work.turns) {
-    if (turn.kind === 'check') rest(found, turn, last ?? null, turn.checkAfterMin ?? 0, work, facts, zeroAt)
+    if (turn.kind === 'check') rest(found, turn, last ?? null, turn.checkAfterMin ?? 0, work, index, zeroAt)
     else if (turn.kind === 'release' && last) {
       const { minutes, promised } = toCome.wait(work.step, work.roomId, 'out-of-clamps', 'p90', false)
       add(found, turn, activityId(last.id), minutes, promised, [], null, { step: work.step, roomId: work.roomId, coatId: null, milestone: 'out-of-clamps', windowed: false, least: 0 })
     }
-    else if (turn.kind === 'release') lying(found, work.step.id, turn, { milestone: 'out-of-clamps', risk: 'p90', windowed: false }, facts, zeroAt)
+    else if (turn.kind === 'release') lying(found, work.step.id, turn, { milestone: 'out-of-clamps', risk: 'p90', windowed: false }, index, zeroAt)
   }
 }
 
-function rest(found: LagsOfPiece, turn: TurnRow, after: TurnRow | null, minutes: number, work: StepWork, facts: PlanFacts, zeroAt: number) {
+function rest(found: LagsOfPiece, turn: TurnRow, after: TurnRow | null, minutes: number, work: StepWork, index: FactIndex, zeroAt: number) {
   if (after) found.lags.push({ from: activityId(after.id), to: activityId(turn.id), min: minutes })
-  const film = facts.films.filter(each => each.stepId === work.step.id).at(-1)
+  const film = index.film.get(work.step.id)
   if (!after && film) found.lags.push({ from: null, to: activityId(turn.id), min: Math.max(0, minutesFrom(zeroAt, film.endedAt, Math.ceil) + minutes) })
 }
 
@@ -139,7 +139,7 @@ function apart(windows: LagWindow[]): LagWindow[] {
   return joined
 }
 
-function recoveryOf(versionId: number | null, facts: PlanFacts): Recovery | null {
-  const recovery = facts.recoveries.find(each => each.versionId === versionId && each.name !== null)
+function recoveryOf(versionId: number | null, index: FactIndex): Recovery | null {
+  const recovery = versionId === null ? undefined : index.recoveries.get(versionId)
   return recovery ? { penalty: missed, minutes: recovery.minutes } : null
 }

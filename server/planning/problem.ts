@@ -1,5 +1,6 @@
 import { handsOf } from '~~/server/planning/hands'
 import type { Hands } from '~~/server/planning/hands'
+import { indexOf } from '~~/server/planning/fact-index'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId, lagsOf } from '~~/server/planning/lags'
 import type { LagFilm, LagInput, StepWork } from '~~/server/planning/lags'
@@ -35,7 +36,8 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const zeroAt = zeroOf(now)
   const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt, zeroAt + horizonDays * 24 * 60 * 60_000)
   const works = worksOf(facts)
-  const found = byPiece(works).map(own => lagsOf(own, facts, toCome, zeroAt))
+  const index = indexOf(facts)
+  const found = byPiece(works).map(own => lagsOf(own, facts, index, toCome, zeroAt))
   const lags = [...found.flatMap(each => each.lags), ...keptOut(works, facts, toCome.shut, hands, zeroAt), ...dustKeptOff(works, facts, zeroAt)]
   const leftOut = follow(new Set([...found.flatMap(each => [...each.unreachable]), ...refusedWork(works, facts)]), works, lags, hands)
   const planned = works.map(work => ({ ...work, turns: work.turns.filter(turn => !leftOut.has(turn.id)) })).filter(work => work.turns.length > 0)
@@ -80,15 +82,9 @@ function byPiece(works: readonly StepWork[]): StepWork[][] {
 function follow(unreachable: Set<number>, works: readonly StepWork[], lags: readonly LagInput[], hands: readonly Hands[]): Set<number> {
   const out = new Set(unreachable)
   for (const { step, turns } of works) if (step.hands > hands.filter(each => each.may(step.kind)).length) for (const turn of turns) out.add(turn.id)
-  for (let grew = true; grew;) {
-    grew = false
-    for (const lag of lags) {
-      const [from, to] = [turnOf(lag.from), turnOf(lag.to)]
-      if (from === null || to === null || !out.has(from) || out.has(to)) continue
-      out.add(to)
-      grew = true
-    }
-  }
+  if (out.size === 0) return out
+  const after = grouped(lags, lag => turnOf(lag.from))
+  for (const turn of out) for (const lag of after.get(turn) ?? []) out.add(turnOf(lag.to) ?? turn)
   return out
 }
 
@@ -167,12 +163,14 @@ function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): N
 
 /** Work in hand stays with who is at it; a pin stays where somebody put it. */
 function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[], zeroAt: number): Fixed[] {
+  // Of several pins of one turn the first counts.
+  const pins = new Map(facts.pins.filter(pin => pin.startsAt >= zeroAt).reverse().map(pin => [pin.turnId, pin]))
   return works.flatMap(work => work.turns.flatMap((turn) => {
     const { step } = work
-    const able = handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind))
-    const chosen = (memberId: number | null) => [...able].sort((a, b) => Number(b.memberId === memberId) - Number(a.memberId === memberId)).slice(0, step.hands).map(each => each.id)
+    const able = () => handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind))
+    const chosen = (memberId: number | null) => able().sort((a, b) => Number(b.memberId === memberId) - Number(a.memberId === memberId)).slice(0, step.hands).map(each => each.id)
     if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor), resources: chosen(turn.doingMemberId) }]
-    const pinned = facts.pins.find(pin => pin.turnId === turn.id && pin.startsAt >= zeroAt)
+    const pinned = pins.get(turn.id)
     return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId) }] : []
   }))
 }

@@ -4,7 +4,6 @@ import type { Search } from '~~/server/planning/search'
 import type { Database } from '~~/server/utils/database'
 import { impossible, isRefusal } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
-import { startsOf } from '#shared/planning/types'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 import type { BatchFare, Difference, WhatIf, WhatIfAnswer } from '#shared/schemas/what-if'
 import { whatIfWords } from '#shared/words/what-if'
@@ -25,10 +24,11 @@ export const askerOf = (search: Search): Ask => async (problem, schedules) => {
 export interface Base { changed: Changed, from: Plan, plan: Plan, searched: number }
 
 /** A copy that begins from a plan and asks no price for moving: what a change makes possible counts, not how far it is from the plan of now. */
-export const copyFrom = (problem: PlanProblem, from: Pick<Plan, 'entries'> | null): PlanProblem => ({
-  ...problem, weights: { ...problem.weights, moves: 0 },
-  previous: from === null ? problem.previous : Object.fromEntries(Object.entries(startsOf(from as Plan)).filter(([id]) => problem.activities.some(each => each.id === id))),
-})
+export function copyFrom(problem: PlanProblem, from: Pick<Plan, 'entries'> | null): PlanProblem {
+  const known = new Set(problem.activities.map(each => each.id))
+  const previous = from === null ? problem.previous : Object.fromEntries(from.entries.filter(entry => known.has(entry.activity)).map(entry => [entry.activity, entry.start]))
+  return { ...problem, weights: { ...problem.weights, moves: 0 }, previous }
+}
 
 /**
  * What changes are measured against. It is searched as often as they will be and from the same plan, so that a difference
