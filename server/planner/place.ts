@@ -2,6 +2,7 @@ import { none } from './model'
 import { never } from './profile'
 import { seek } from './seek'
 import type { Board, Spot } from './board'
+import type { Kept } from './seek'
 import type { CompiledRest, Model } from './model'
 import type { Seat } from './seat'
 import type { Edge, Unit, UnitRest } from './units'
@@ -42,6 +43,8 @@ export class Attempt {
   readonly origin = new Map<Edge, number>()
   missed = noWindows
   dropped = noNodes
+  /** A start to be kept, by the same hands: no session is joined that would put it off. */
+  private kept: Kept | null = null
   private readonly logged: Int32Array
   private readonly changed: Int32Array
 
@@ -109,8 +112,9 @@ export class Attempt {
   }
 
   /** Places one node after those before it; when it cannot, the board is as it was. */
-  placeNode(k: number): Step {
+  placeNode(k: number, kept: Kept | null = null): Step {
     const { board } = this
+    this.kept = kept
     const [logged, changed] = [board.logged, board.changed]
     this.giveBack(k)
     const step = this.tryNode(k)
@@ -133,7 +137,7 @@ export class Attempt {
       const stopped = this.windowsFrom(k, from)
       if (stopped) return stopped
       const opens = this.opens
-      const spot = seek(this.board, node, opens, this.latest, extra)
+      const spot = seek(this.board, node, opens, this.latest, extra, this.kept)
       if (!spot) return { kind: 'failed', cause: { node: k, edge: null, resource: null } }
       from = spot.start
       if (from > opens) continue

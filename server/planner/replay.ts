@@ -4,7 +4,7 @@ import { fillIn } from './construct'
 import { Seat } from './seat'
 import type { Layout } from './construct'
 import type { Model } from './model'
-import type { Unit, UnitNode } from './units'
+import type { Edge, Unit, UnitNode } from './units'
 
 interface Next { seat: Seat, node: number, at: number }
 
@@ -20,17 +20,19 @@ export function replay(model: Model, units: readonly Unit[], floors: Int32Array,
   const layout: Layout = { board, seats: [], conflicts: nameFixed(board) }
   const seats = units.map(unit => new Seat(board, unit))
   const { previous } = model.problem
+  const handsOf = ({ members }: UnitNode) => model.problem.previousResources[model.problem.activities[members[0]!]!.id]?.join('\n') ?? null
   const wasAt = ({ members }: UnitNode) => previous[model.problem.activities[members[0]!]!.id]
   const isOld = (seat: Seat) => seat.unit.nodes.some(node => wasAt(node) !== undefined)
   const old = seats.filter(isOld)
-  for (const seat of old) seat.open(floors)
+  for (const seat of old) seat.open(floors, missedBefore(seat.unit, wasAt))
   const steps = old.flatMap(seat => stepsOf(seat, floors)).sort((a, b) => a.at - b.at)
   const failed = new Set<Seat>()
   const off = new Set<Seat>()
   for (const { seat, node } of steps) {
     if (off.has(seat)) continue
-    const was = wasAt(seat.unit.nodes[node]!)
-    if (seat.placeNode(node).kind === 'placed' && (was === undefined || seat.start(node) === was)) continue
+    const unitNode = seat.unit.nodes[node]!
+    const was = wasAt(unitNode)
+    if (seat.placeNode(node, was === undefined ? null : { start: was, mode: handsOf(unitNode) }).kind === 'placed' && (was === undefined || seat.start(node) === was)) continue
     failed.add(seat)
     // Off at once: what is later than it was must not take the time of those that keep theirs.
     const going = [...withLater([seat])].filter(each => !off.has(each))
@@ -45,6 +47,24 @@ export function replay(model: Model, units: readonly Unit[], floors: Int32Array,
   const rest = [...old.filter(seat => off.has(seat) && !failed.has(seat)), ...seats.filter(seat => !isOld(seat) || failed.has(seat))]
   for (const seat of rest) for (const node of seat.unit.nodes) for (const activity of node.members) board.placed[activity] = 0
   return fillIn(layout, rest, floors, shouldStop) ? layout : null
+}
+
+/** Windows that the last plan gave up: a piece that has missed one keeps its times all the same. */
+function missedBefore({ nodes, into }: Unit, wasAt: (node: UnitNode) => number | undefined): Set<Edge> {
+  const found = new Set<Edge>()
+  const recovered = nodes.map(() => 0)
+  for (const [k, node] of nodes.entries()) {
+    const start = wasAt(node)
+    for (const edge of into[k]!) {
+      const from = edge.from < 0 ? 0 : wasAt(nodes[edge.from]!)
+      if (!edge.recovery || start === undefined || from === undefined) continue
+      const origin = edge.from < 0 ? 0 : from + nodes[edge.from]!.length + recovered[edge.from]!
+      if (start - origin <= edge.waits.at(-1)!) continue
+      found.add(edge)
+      recovered[k]! += edge.recovery.minutes
+    }
+  }
+  return found
 }
 
 /** The nodes of a unit with their old starts, none before what it waits for. */

@@ -2,6 +2,7 @@ import { Attempt } from './place'
 import type { Board, Session } from './board'
 import type { Mode } from './model'
 import type { Failure, Step } from './place'
+import type { Kept } from './seek'
 import type { Edge, Unit } from './units'
 
 /** Where a unit sits on the board: what it booked and its times, kept so that it can be taken off and put back. */
@@ -55,11 +56,11 @@ export class Seat {
   }
 
   /** Begins to place node by node: nothing is booked yet. */
-  open(floors: Int32Array | null): void {
+  open(floors: Int32Array | null, missed: ReadonlySet<Edge> = nothingMissed): void {
     this.swap()
     this.now.dropped = this.before.dropped
-    this.now.missed = nothingMissed
-    this.attempt.begin(floors, nothingMissed, this.now.dropped)
+    this.now.missed = missed
+    this.attempt.begin(floors, missed, this.now.dropped)
     this.reopen()
   }
 
@@ -76,9 +77,9 @@ export class Seat {
   }
 
   /** Places one node, those before it being placed; else says what is in the way. */
-  placeNode(node: number): Step {
+  placeNode(node: number, kept: Kept | null = null): Step {
     const from = this.board.logged
-    const step = this.attempt.placeNode(node)
+    const step = this.attempt.placeNode(node, kept)
     if (step.kind !== 'placed') return step
     this.keepLog(this.now, from)
     this.readNode(this.now, node)

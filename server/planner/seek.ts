@@ -108,29 +108,37 @@ function fitJoin(board: Board, node: UnitNode, session: Session, from: number, l
   return apartFit(board, node, start, length) === start ? start : null
 }
 
+/** Where a node was in the last plan: its start, and the key of its mode where that is known. */
+export interface Kept { readonly start: number, readonly mode: string | null }
+
 /** Booked minutes of the chosen resources: of two that are free at once, the less busy one works. */
 const busyness = (board: Board, mode: Mode) => mode.resources.reduce((sum, resource) => sum + board.profiles[resource]!.load, 0)
 
 /**
  * Earliest room for a node from `from` on, in whichever mode is first. An open session of the family is joined instead when it begins
  * no later than `latest` and delays no more than the set-up it saves. Null: no room before the horizon.
+ * @param kept a start that no session joined may put off, and the mode that is taken where several begin at once
  */
-export function seek(board: Board, node: UnitNode, from: number, latest: number, extra: number): Spot | null {
+export function seek(board: Board, node: UnitNode, from: number, latest: number, extra: number, kept: Kept | null = null): Spot | null {
   const length = node.length + extra
+  const isWished = (mode: Mode) => mode.key === kept?.mode
   let best: Spot | null = null
   for (const mode of node.modes) {
     const fit = fitMode(board, node, mode, from, length)
     if (!fit) continue
-    if (best === null || fit.start < best.start || (fit.start === best.start && busyness(board, mode) < busyness(board, best.mode))) {
+    if (best === null || fit.start < best.start || (fit.start === best.start && !isWished(best.mode) && (isWished(mode) || busyness(board, mode) < busyness(board, best.mode)))) {
       best = { start: fit.start, length: fit.length, mode, join: null, recovered: extra > 0 }
     }
   }
   if (node.family === none) return best
-  const patience = Math.min(latest, (best?.start ?? never) + node.setup + node.cleanup)
+  const patience = Math.min(latest, kept?.start ?? never, (best?.start ?? never) + node.setup + node.cleanup)
   const sessions = board.sessionsOf[node.family]!
+  // Where those wished for can begin at once, they go on to nobody else's session.
+  const own = best !== null && isWished(best.mode) && best.start === from
   for (let i = sessions.length - 1; i >= 0; i--) {
+    if (own && !isWished(sessions[i]!.mode)) continue
     const start = fitJoin(board, node, sessions[i]!, from, length)
-    if (start !== null && start <= patience && (!best?.join || start < best.start)) best = { start, length, mode: sessions[i]!.mode, join: sessions[i]!, recovered: extra > 0 }
+    if (start !== null && start <= patience && (!best?.join || start < best.start || (start === best.start && isWished(sessions[i]!.mode) && !isWished(best.mode)))) best = { start, length, mode: sessions[i]!.mode, join: sessions[i]!, recovered: extra > 0 }
   }
   return best
 }

@@ -1,4 +1,4 @@
-import { handsOf } from '~~/server/planning/hands'
+import { handsId, handsOf } from '~~/server/planning/hands'
 import type { Hands } from '~~/server/planning/hands'
 import { indexOf } from '~~/server/planning/fact-index'
 import type { PlanFacts } from '~~/server/planning/facts'
@@ -46,6 +46,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
   const asked = [...held, ...begunWith(planned, held, facts, zeroAt)]
   const fixed = fixedOf(planned, facts, toCome, hands, zeroAt)
   const reserved = reservedFor(planned, fixed, familyOf)
+  const last = facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId)))
   const input: PlanInput = {
     activities: planned.flatMap(work => work.turns.map(turn => activity(work.step, turn, handsFor(work, facts, toCome, hands)))),
     resources: [...hands.map(each => ({ id: each.id, capacity: 1, open: openWithout(each.open, reserved.filter(span => span.hand === each.id)) })), ...placesOf(facts)],
@@ -56,7 +57,8 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     jobs: jobsOf(planned, facts, zeroAt),
     fixed,
     horizon: horizonDays * 24 * 60,
-    previous: Object.fromEntries(facts.last.filter(entry => entry.startsAt >= zeroAt && known.has(activityId(entry.turnId))).map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
+    previous: Object.fromEntries(last.map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
+    previousResources: Object.fromEntries(last.flatMap(entry => (entry.memberId === null ? [] : [[activityId(entry.turnId), [handsId(entry.memberId)]]]))),
   }
   // A plan that nobody has heard of is a beginning, not a promise.
   const isHeard = facts.last.some(entry => entry.toldAt !== null)

@@ -27,7 +27,8 @@ export interface Base { changed: Changed, from: Plan, plan: Plan, searched: numb
 export function copyFrom(problem: PlanProblem, from: Pick<Plan, 'entries'> | null): PlanProblem {
   const known = new Set(problem.activities.map(each => each.id))
   const previous = from === null ? problem.previous : Object.fromEntries(from.entries.filter(entry => known.has(entry.activity)).map(entry => [entry.activity, entry.start]))
-  return { ...problem, weights: { ...problem.weights, moves: 0 }, previous }
+  const previousResources = from === null ? problem.previousResources : Object.fromEntries(from.entries.map(entry => [entry.activity, entry.resources]))
+  return { ...problem, weights: { ...problem.weights, moves: 0 }, previous, previousResources }
 }
 
 /**

@@ -14,6 +14,7 @@ export interface PlanInput {
   fixed?: readonly (Pick<Fixed, 'activity' | 'start'> & Partial<Fixed>)[]
   horizon?: number
   previous?: Readonly<Record<string, number>>
+  previousResources?: Readonly<Record<string, readonly string[]>>
   weights?: Partial<Objective>
 }
 
@@ -199,7 +200,7 @@ export function planProblem(input: PlanInput): PlanProblem {
     families: each(input.families, 'families', (item, field) => readFamily(item, field, ids)),
     jobs: each(input.jobs, 'jobs', (item, field) => readJob(item, field, ids)),
     fixed: each(input.fixed, 'fixed', (item, field) => readFixed(item, field, ids)),
-    previous: input.previous ?? {},
+    previous: input.previous ?? {}, previousResources: input.previousResources ?? {},
     weights: { ...standardWeights, ...input.weights },
   }
   unique(problem.families.map(family => family.id), 'families')

@@ -116,6 +116,8 @@ export interface PlanProblem {
   readonly horizon: number
   /** Starts of the last plan by activity; a start that differs counts as one move. */
   readonly previous: Readonly<Record<string, number>>
+  /** Who the last plan chose for it: whoever keeps its start keeps them too where it can. */
+  readonly previousResources: Readonly<Record<string, readonly string[]>>
   readonly weights: Objective
 }
 

@@ -77,6 +77,35 @@ describe('planning anew', () => {
     }
   })
 
+  it('keeps who does it, so that all the rest keeps its time', () => {
+    // Two people may do a (30 min) and b (60), only one of them c. As it was, that one did a and is free at 30 for c; had they b, c would begin at 60 only.
+    for (const [one, other] of [['p', 'q'], ['q', 'p']] as const) {
+      const either = [{ of: ['p', 'q'], count: 1 }]
+      const problem = planProblem({
+        resources: [{ id: 'p', capacity: 1 }, { id: 'q', capacity: 1 }], horizon: 600,
+        activities: [{ id: 'a', minutes: 30, choices: either }, { id: 'b', minutes: 60, choices: either }, { id: 'c', minutes: 10, choices: [{ of: [one], count: 1 }] }],
+        previous: { a: 0, b: 0, c: 30 }, previousResources: { a: [one], b: [other], c: [one] },
+      })
+      const plan = solve(problem, { schedules: 1 })
+      expect(check(problem, plan)).toEqual([])
+      expect(startsOf(plan)).toEqual({ a: 0, b: 0, c: 30 })
+      expect(plan.entries.map(entry => entry.resources)).toEqual([[one], [other], [one]])
+    }
+  })
+
+  it('keeps a piece where it was that has missed a window', () => {
+    // Coated 0-10, to be sanded within 20 minutes or with 5 minutes more of work; hands are away from 15 to 100: 100-115 with its recovery.
+    const problem = planProblem({
+      resources: [{ id: 'hands', capacity: 1, open: [[0, 15], [100, 600]] }], horizon: 600,
+      activities: [{ id: 'coat', minutes: 10, uses: { hands: 1 } }, { id: 'sand', minutes: 10, uses: { hands: 1 } }],
+      lags: [{ from: 'coat', to: 'sand', windows: [[0, 20]], recovery: { penalty: 1, minutes: 5 } }],
+      previous: { coat: 0, sand: 100 },
+    })
+    const plan = solve(problem, { schedules: 1 })
+    expect(check(problem, plan)).toEqual([])
+    expect(plan.entries.map(({ start, end }) => [start, end])).toEqual([[0, 10], [100, 115]])
+  })
+
   it('lets those that shared a session with what must move keep their own times', () => {
     // Set-up 80-90, then a 90-110, b 110-130, c 130-150 in a row. Now a is ready at 120 only: it would take 120-140 from b and c, and comes on after them, 150-170.
     const ids = ['a', 'b', 'c']
