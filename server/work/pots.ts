@@ -7,10 +7,17 @@ import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
 import { airAt } from '#shared/air/room'
 import { potLifeAt } from '#shared/drying/pot-life'
 import { trackRoom } from '#shared/drying/tools'
-import type { RoomAir } from '#shared/drying/types'
+import type { Air, RoomAir } from '#shared/drying/types'
 
 /** How long a mixed quantity lasts, minutes: usually, and at the least. `tempC`: the warmth it was reckoned for, null where nobody read it and the sheet's stands. */
 export interface Pot { minutes: number, least: number, sheetMinutes: number, tempC: number | null }
+
+/** The air of a room at an instant (ms UTC) as its readings tell it; null where nobody read it, or read what hands do not work in (-20..60 °C). */
+export function airRead(airs: ReadonlyMap<number, RoomAir>, roomId: number | null, at: number): Air | null {
+  const known = airs.get(roomId ?? 0)
+  const air = known && airAt(trackRoom(preparedMaterials.tools, known, at), at)
+  return air && !air.assumed && air.tempC >= -20 && air.tempC <= 60 ? air : null
+}
 
 /** How long what is mixed of some material editions at an instant (ms UTC) lasts in the rooms of a studio; null for what does not go off in its pot. */
 export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>) {
@@ -20,9 +27,7 @@ export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionI
     const figure = figures.find(each => each.versionId === versionId)
     const sheet = figure && sheets.get(figure.versionId)
     if (!figure || !sheet) return null
-    const known = airs.get(roomId ?? 0)
-    const air = known && airAt(trackRoom(preparedMaterials.tools, known, at), at)
-    const tempC = air && !air.assumed && air.tempC >= -20 && air.tempC <= 60 ? air.tempC : null
+    const tempC = airRead(airs, roomId, at)?.tempC ?? null
     const here = (minutes: number) => tempC === null ? minutes : potLifeAt(minutes, sheet.reference.tempC, tempC)
     return { minutes: here(figure.typical), least: here(figure.low ?? figure.typical), sheetMinutes: figure.typical, tempC }
   }

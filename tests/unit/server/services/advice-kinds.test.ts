@@ -224,6 +224,11 @@ const kinds: Record<AdviceCode | StartAdvice['code'], Kind> = {
     about: 'turn', says: /^What is mixed may go off after 9 min: enough for 1 of these 2\. Mix 2 times\.$/,
     wrong: s => [22, 22].forEach(tempC => resin(s, tempC)), tamed: s => resin(s, 22),
   },
+  'open-time': {
+    // The sheet's own air, 21 C: 4 min at the least, and a frame takes 8. Paste is open for 15 min, and a lining takes 10.
+    about: 'turn', says: /^Once spread, this glue may skin over or set after 4 min; this glue-up takes 8\. Join fewer parts at once/,
+    wrong: s => gluing(s, 'mitred-frame', 'glue-up'), tamed: s => gluing(s, 'painted-waxed-box', 'line-lid'),
+  },
   'pack-early': {
     about: 'turn', at: now + 40 * hour, says: /^Wrapped before 10:00 it may print/,
     wrong: s => packed(s, now), tamed: s => packed(s, now - 9 * hour),
@@ -251,6 +256,12 @@ function onBook(s: Work, under: string | null) {
 function resin(s: Work, tempC: number) {
   s.read(tempC, 0.4)
   s.leaveAllBut('resin-tray', s.start('resin-tray'), ['seal'])
+}
+
+/** A piece about to be glued in the air of most glues' sheets. */
+function gluing(s: Work, schedule: string, step: string) {
+  s.read(21, 0.5)
+  s.leaveAllBut(schedule, s.start(schedule), [step])
 }
 
 /** A frame to be gilded, all left out but some steps, and what was said of the air on it. */

@@ -1,0 +1,34 @@
+import { eq, inArray } from 'drizzle-orm'
+import { materialFigure } from '~~/db/schema'
+import type { studio } from '~~/db/schema'
+import type { Database } from '~~/server/utils/database'
+import { scoped } from '~~/server/utils/scoped'
+import { dryingMaterials } from '~~/server/work/materials'
+import { airRead } from '~~/server/work/pots'
+import { openDriver, openTimeAt } from '#shared/drying/open-time'
+import type { RoomAir } from '#shared/drying/types'
+
+/** So many degrees over its minimum temperature glue can be taken somewhere cooler, planning value. */
+const coolerC = 3
+
+/** How long glue stays open at the least, minutes. `room`: where it would stay open longer, null where nobody read the air or it is near the glue's minimum temperature. */
+export interface OpenTime { least: number, room: 'cooler' | 'warmer' | null }
+
+/** How long glues of some editions stay open at an instant (ms UTC) once spread in the rooms of a studio; null where their sheets say nothing of it. */
+export function openTimesOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>) {
+  const figures = versionIds.length === 0 ? [] : db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, [...versionIds]), eq(materialFigure.name, 'open time'))).all()
+  const sheets = dryingMaterials(db, owner.id, figures.map(each => each.versionId))
+  return (versionId: number | null, roomId: number | null, at: number): OpenTime | null => {
+    const figure = figures.find(each => each.versionId === versionId)
+    const sheet = figure && sheets.get(figure.versionId)
+    if (!figure || !sheet) return null
+    const least = figure.low ?? figure.typical
+    const air = airRead(airs, roomId, at)
+    if (air === null) return { least, room: null }
+    // Hot glue stays open until it gels, and that comes sooner in the cold.
+    const gels = openDriver(sheet, least) === 'gel'
+    const nearMinimum = sheet.minTempC !== null && air.tempC < sheet.minTempC + coolerC
+    // Air is read through tables: past a hundredth of a minute there is nothing but their rounding.
+    return { least: Math.round(openTimeAt(least, sheet, air) * 100) / 100, room: gels ? 'warmer' : nearMinimum ? null : 'cooler' }
+  }
+}
