@@ -11,7 +11,7 @@ export type ScheduleProblemCode =
   | 'step unnamed' | 'touches nothing' | 'no such part' | 'no such face' | 'lays nothing' | 'no such material' | 'lays none' | 'joins one'
   | 'held for nothing' | 'nobody takes it out' | 'no minutes' | 'check unnamed' | 'checks out of order'
   | 'no such step' | 'wait twice' | 'waits for itself' | 'nothing dries' | 'no such milestone' | 'no window' | 'window shuts first' | 'recovery unnamed'
-  | 'circle' | 'apart' | 'no order' | 'never over' | 'too soon over' | 'no end' | 'window narrow' | 'round too tight'
+  | 'circle' | 'apart' | 'no order' | 'never over' | 'too soon over' | 'no end' | 'window narrow' | 'round too tight' | 'open too short'
 
 /**
  * Something that cannot be (`refused`) or that a maker should know (`caution`). `step` and `other` are keys of the steps it
@@ -162,12 +162,20 @@ function waitProblems(reckoned: Reckoned): ScheduleProblem[] {
   return [...shutWindows(reckoned), ...endless, ...narrow, ...tight]
 }
 
+/** Glue-ups of one piece that take longer than their glue stays open by its sheet: spreading, joining and clamping are one step. */
+function openProblems({ steps }: ScheduleDraft, sheets: Sheets): ScheduleProblem[] {
+  return steps.flatMap((step) => {
+    const glue = step.kind === 'glue-up' ? sheetOf(step, sheets) : null
+    return glue && glue.openMin !== null && step.pieceMin > glue.openMin ? [caution('open too short', { step: step.key, what: glue.name, minutes: glue.openMin })] : []
+  })
+}
+
 /**
  * All that is wrong with a draft, first what cannot be, then what should be known. With times: windows that shut before
- * they can be used around the clock, coats too soon over others, waits without an end.
+ * they can be used around the clock, coats too soon over others, waits without an end, glue that is not open long enough.
  */
 export function scheduleProblems(draft: ScheduleDraft, sheets: Sheets, reckoned: Reckoned, rules: readonly SystemRuleWire[]): ScheduleProblem[] {
   const found = draftProblems(draft, sheets)
   const timed = found.some(each => each.code === 'circle' || each.code === 'no such step') ? [] : [...waitProblems(reckoned), ...systemProblems(draft, reckoned, rules)]
-  return [...found, ...timed].sort((a, b) => (a.kind === b.kind ? 0 : a.kind === 'refused' ? -1 : 1))
+  return [...found, ...timed, ...openProblems(draft, sheets)].sort((a, b) => (a.kind === b.kind ? 0 : a.kind === 'refused' ? -1 : 1))
 }

@@ -2,6 +2,7 @@ import type { ScheduleDraft } from '#shared/schemas/schedule-draft'
 import type { ScheduleProblem, ScheduleProblemCode } from '#shared/schedules/problems'
 import { milestoneNames } from '#shared/terms'
 import { waitSpan } from '#shared/words/schedules'
+import { openSpan } from '#shared/words/advice-start'
 import { milestoneText, titled } from '#shared/words/steps'
 
 interface Said { step: string, other: string, what: string, minutes: number, steps: string }
@@ -49,6 +50,7 @@ const sentences: Record<ScheduleProblemCode, (said: Said) => string> = {
   'no end': ({ step, other, what }) => `${step} waits until ${other} is ${rung(what)}, which has no end in sight in the studio’s usual air.`,
   'window narrow': ({ step, other }) => `${step}: the window after ${other} is narrower than its doubt, so only a touch test finds it.`,
   'round too tight': ({ step, minutes }) => `${step} asks for more coats a day than dry in one: likely ${waitSpan(minutes)} between two.`,
+  'open too short': ({ step, what, minutes }) => `${step} takes longer than its glue may stay open: ${what}, ${openSpan(minutes)} by its sheet. Join fewer parts at once, have another pair of hands, or choose a glue that stays open longer.`,
 }
 
 /** What is wrong, with the step named: “Second coat” lays nothing. Choose its material. */

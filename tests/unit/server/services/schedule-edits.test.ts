@@ -26,6 +26,13 @@ const save = ({ id, no }: Pick<ScheduleDraftWire, 'id' | 'no'>, draft: ScheduleD
 let keys = 0
 const start = (scheduleId: number, name: string) => startBatch(db, studioId, { member: members.maker }, { clientKey: `schedule-batch-${keys += 1}`, name, scheduleId, pieces: [name], sizeUnits: 1, placeId: places.shelf, order: null, startsAt: new Date(now).toISOString(), oldObject: false }, now)
 
+describe('what can be laid', () => {
+  it('comes with the least minutes that glue stays open, and without where its sheet says nothing', () => {
+    const open = (name: string) => [...sheets.values()].find(each => each.name === name)?.openMin
+    expect([open('Yellow wood glue (PVA, indoor)'), open('Liquid hide glue'), open('Shellac')]).toEqual([4, 8, null])
+  })
+})
+
 describe('an edition saved', () => {
   it('comes back as it was drawn, and the library\'s is edited in place', () => {
     const first = read(box)
