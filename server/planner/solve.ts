@@ -47,7 +47,8 @@ function* tries(model: Model, pieces: readonly (readonly Component[])[]): Genera
     const floors = Int32Array.from(problem.activities, activity => problem.previous[activity.id] ?? 0)
     const alone = byPrevious(model, units(Infinity))
     yield { units: alone, build: shouldStop => replay(model, alone, floors, shouldStop) }
-    for (const divisor of divisors) yield inOrder(byPrevious(model, units(divisor)), floors)
+    // Where moves cost nothing, what has become possible may begin sooner than it was to.
+    for (const divisor of divisors) yield inOrder(byPrevious(model, units(divisor)), problem.weights.moves === 0 ? null : floors)
   }
   for (let rule = 0; rule < ruleCount; rule++) {
     for (const divisor of divisors) yield inOrder(byRule(model, units(divisor), rule))

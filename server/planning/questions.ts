@@ -4,19 +4,23 @@ import type { Search } from '~~/server/planning/search'
 import type { Database } from '~~/server/utils/database'
 import { impossible, isRefusal } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
+import { check } from '#shared/planning/check'
+import { makePlan } from '#shared/planning/plan'
 import type { Plan, PlanProblem } from '#shared/planning/types'
-import type { BatchFare, Difference, WhatIf, WhatIfAnswer } from '#shared/schemas/what-if'
+import type { BatchFare, Difference, WhatIfAnswer } from '#shared/schemas/what-if'
 import { whatIfWords } from '#shared/words/what-if'
 
 const minute = 60_000
 /** One search of a question: so short that a page of them is answered in two seconds. */
 const questionMs = 200
+/** What is measured against another search may go as far as that one, though the machine has more to do now: a shorter search finds less. */
+const likeOtherMs = 3 * questionMs
 
 /** Solves a copy of a problem under a small budget, with `most` schedules; null when it did not come to an end. */
 export type Ask = (problem: PlanProblem, most?: number) => Promise<Plan | null>
 
 export const askerOf = (search: Search): Ask => async (problem, schedules) => {
-  const done = await search('question', problem, { millis: questionMs, schedules })
+  const done = await search('question', problem, { millis: schedules === undefined ? questionMs : likeOtherMs, schedules })
   return done.ok && done.broken.length === 0 ? done.plan : null
 }
 
@@ -50,12 +54,18 @@ function betterOf(one: Plan, other: Plan): Plan {
 }
 
 /** What one change makes of the plan, row by row; nothing is kept. */
-export async function whatIf(change: WhatIf, changed: Changed, base: Base, ask: Ask): Promise<WhatIfAnswer | Refusal> {
+export async function whatIf(changed: Changed, base: Base, ask: Ask): Promise<WhatIfAnswer | Refusal> {
   const solved = await ask(copyFrom(changed.given.problem, base.from), base.searched)
   if (!solved) return impossible(whatIfWords.notAnswered)
-  // More room or more hours take nothing away: the plan of before would still do.
-  const plan = change.kind === 'places' ? orBefore(solved, base.plan) : solved
-  return { ok: true, difference: differenceOf(base, changed, plan), caution: changed.caution }
+  // More room or more hours take nothing away: the plan of before would still do, and a short search need not find it again.
+  const still = unmoved(changed.given.problem, base.plan)
+  return { ok: true, difference: differenceOf(base, changed, still ? orBefore(solved, still) : solved), caution: changed.caution }
+}
+
+/** A plan as it stands, judged by a changed problem; null where it breaks that one's rules. */
+function unmoved(problem: PlanProblem, plan: Plan): Plan | null {
+  if (check(problem, plan).length > 0) return null
+  return makePlan(problem, { ...plan, bound: 0 })
 }
 
 export const orBefore = (after: Plan, before: Plan): Plan => betterOf(before, after)

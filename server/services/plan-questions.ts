@@ -49,7 +49,7 @@ export async function askWhatIf(db: Database, studioId: number, change: WhatIf, 
     bases.delete(studioId)
     return base
   }
-  return whatIf(change, changed, base, ask)
+  return whatIf(changed, base, ask)
 }
 
 /** By kind of place: how many there are, and when the one not looked at for longest was seen; null where nothing stands on any. */

@@ -98,6 +98,23 @@ describe('what if', () => {
     const less = (base.plan.objective.lateness - again.objective.lateness) / 60
     expect(differenceText(told.difference)).toContain(less < 0.5 ? 'ateness stays as it is' : again.objective.lateness === 0 ? 'none is late any more' : 'less late')
   })
+  it('finds in two plans what more places buy, though it begins from the last one', async () => {
+    const { db, studioId } = await oneBench()
+    const told = await askWhatIf(db, studioId, { kind: 'places', placeKind: 'bench', more: 5 }, now, problem => Promise.resolve(solve(problem, { schedules: 2 })))
+    if (isRefusal(told)) throw new Error(told.message)
+    expect(told.difference.latenessAfter).toBeLessThan(told.difference.latenessBefore - 60)
+    expect(told.difference.batches[0]?.afterAt).toBeLessThan(told.difference.batches[0]?.beforeAt ?? 0)
+  })
+  it('makes nothing worse that takes nothing away, however poor the search was', async () => {
+    const { db, studioId } = await oneBench()
+    let asked = 0
+    // Begun five days later, and not searched further.
+    const poor: Ask = problem => Promise.resolve(++asked < 3 ? solve(problem, { schedules: 40 }) : solve({ ...problem, previous: Object.fromEntries(Object.entries(problem.previous).map(([id, start]) => [id, start + 5 * 1440])) }, { schedules: 1 }))
+    const told = await askWhatIf(db, studioId, { kind: 'open day', weekday: 6, fromMin: 540, toMin: 900 }, now, poor)
+    if (isRefusal(told)) throw new Error(told.message)
+    expect(asked).toBe(3)
+    expect(differenceText(told.difference)).toBe('Lateness stays as it is. No batch ends noticeably otherwise.')
+  })
   it('lengthens the waits in a damp room and shortens them in a dry one', async () => {
     const { db, studioId, rooms } = await oneBench()
     db.insert(reading).values({ studioId, roomId: rooms.bench, at: now - hour, toldAt: now, tempC: 18, rh: 0.6, source: 'note' }).run()
