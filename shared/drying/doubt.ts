@@ -136,15 +136,18 @@ export function sheetScale(table: QuantileTable): SheetScale {
   return { middle: fifty, late: (ninety - fifty) / bandZ, early: (fifty - ten) / bandZ }
 }
 
-/** What a bench's tests make of a rung: scores on the sheet's own scale (0 its middle, 1 its sd). */
-export interface RungLearned { parts: Mixture }
+/** One reading of a rung's tests: scores on the sheet's own scale (0 its middle, 1 its sd), and its share in each chance's ln time. */
+export interface LearnedWay { share: number, parts: Mixture }
+
+/** What a bench's tests make of a rung: its readings, whose shares add up to 1. */
+export interface RungLearned { ways: readonly LearnedWay[] }
 
 /** How far the tests move a chance's ln time from the sheet's, at each extra variance: nothing while they say nothing. */
-function learnedMoves({ parts }: RungLearned, scale: SheetScale, p: number, extras: readonly number[]): number[] {
-  let near = 0
+function learnedMoves({ ways }: RungLearned, scale: SheetScale, p: number, extras: readonly number[]): number[] {
+  const near = ways.map(() => 0)
   return extras.map((extra) => {
-    near = mixtureQuantile(parts, scale, p, extra, near)
-    return near - normalPoint(scale, p, extra)
+    const points = ways.map(({ parts }, w) => near[w] = mixtureQuantile(parts, scale, p, extra, near[w]!))
+    return points.reduce((sum, point, w) => sum + ways[w]!.share * point, 0) - normalPoint(scale, p, extra)
   })
 }
 
@@ -153,10 +156,10 @@ const learnedSds = [0, 0.1, 0.2, 0.4, 0.8] as const
 const learnedExtras = learnedSds.map(sd => sd * sd)
 
 /** The table of a rung as its bench has it: the sheet's, moved by what the tests say. */
-export function learnedTable(sheet: QuantileTable, { parts }: RungLearned): QuantileTable {
+export function learnedTable(sheet: QuantileTable, rung: RungLearned): QuantileTable {
   const scale = sheetScale(sheet)
   const values = chances.map((p, chance) => {
-    const moves = learnedMoves({ parts }, scale, p, learnedExtras)
+    const moves = learnedMoves(rung, scale, p, learnedExtras)
     let under = 0
     return sheet.values[chance]!.map((plain, i) => {
       const sd = Math.sqrt(i * extraStep)
@@ -165,7 +168,7 @@ export function learnedTable(sheet: QuantileTable, { parts }: RungLearned): Quan
       return plain + moves[under]! + (moves[under + 1]! - moves[under]!) * share
     })
   })
-  return { doubt: sheet.doubt, values, learned: { parts, scale } }
+  return { doubt: sheet.doubt, values, learned: { ...rung, scale } }
 }
 
 function beyondTable({ doubt, learned }: QuantileTable, chance: Chance, extra: number): number {

@@ -1,8 +1,7 @@
-import type { QuantileTable, SheetScale } from '#shared/drying/doubt'
+import type { LearnedWay, QuantileTable, SheetScale } from '#shared/drying/doubt'
 import { bandZ, sheetScale } from '#shared/drying/doubt'
 import type { BenchSpeed, SpeedBand } from '#shared/drying/material'
 import { sheetSpeed } from '#shared/drying/material'
-import type { Mixture } from '#shared/drying/mixture'
 import { normal } from '#shared/drying/normal'
 
 /** A touch test on its rung's clock, made ready for learning: a bound, not a time. */
@@ -19,30 +18,28 @@ export interface BenchTest {
   extra: number
 }
 
-/**
- * How a sheet's doubt may be divided, on the scale of its own band (1 is its sd): `bench` is the same for every coat here, `coat` is each
- * coat's own. An even bench that the sheet misjudges; one on its sheet, or nearly, whose coats scatter as the sheet says; one half-way. Each adds up to
- * the sheet's own band, so that only evidence over several coats chooses. A sheet speaks for many shops, so its band is more often between benches than between the
- * coats of one: two to one before anything is told; what lies between them a tenth.
- */
-const divisions = [
-  { bench: Math.sqrt(0.97), coat: Math.sqrt(0.03), weight: 0.6 },
-  { bench: Math.sqrt(0.05), coat: Math.sqrt(0.95), weight: 0.3 },
-  { bench: Math.sqrt(0.5), coat: Math.sqrt(0.5), weight: 0.1 },
-] as const
+/** How a sheet's doubt is divided, on the scale of its own band (1 is its sd): `bench` is the same for every coat here, `coat` is each coat's own. */
+interface Division { bench: number, coat: number }
+
+/** An even bench that the sheet misjudges. */
+const even: Division = { bench: Math.sqrt(0.985), coat: Math.sqrt(0.015) }
+/** A bench on its sheet, or nearly, whose coats scatter as the sheet says. Like the even one it adds up to the sheet's own band, so that only evidence over several coats chooses. */
+const scattered: Division = { bench: Math.sqrt(0.05), coat: Math.sqrt(0.95) }
+/** A bench that the sheet misjudges and whose coats scatter besides: no time is told by it, but what is even must be likelier than this too. */
+const offAndScattered: Division = { bench: even.bench, coat: scattered.coat }
 
 /** Share of answers that say nothing: odd coats, slips of the thumb. Either answer then is as good as the other. */
 const oddShare = 0.03
 
-const gridEnd = 5.5
-const gridStep = 0.22
+const gridEnd = 5.44
+const gridStep = 0.16
 /** Offsets of a bench in units of a division's `bench`, and the ln of their standard normal prior. */
 const grid = Float64Array.from({ length: Math.round(2 * gridEnd / gridStep) + 1 }, (_, i) => i * gridStep - gridEnd)
 const prior = grid.map(u => -u * u / 2)
 /** ln of the grid's own sum, so that evidence with no test is 0. */
 const priorEvidence = Math.log(prior.reduce((sum, p) => sum + Math.exp(p), 0))
 
-/** Variance in which the rungs of one coat differ, on the sheet's scale: what an even bench's coats differ in. */
+/** Variance in which the rungs of one scattered coat differ from one another, on the sheet's scale: a planning value. */
 const rungVariance = 0.03
 
 /** ln of the chance of an answer given the score its film goes by. */
@@ -53,7 +50,7 @@ function answerLog({ log, reached, weight, extra }: BenchTest, { middle, late, e
 }
 
 /** Adds to `logs`, along the grid, what tests of one rung say of its offset under one division. */
-function told(logs: Float64Array, tests: readonly BenchTest[], scale: SheetScale, { bench, coat }: typeof divisions[number]): Float64Array {
+function told(logs: Float64Array, tests: readonly BenchTest[], scale: SheetScale, { bench, coat }: Division): Float64Array {
   return logs.map((log, i) => tests.reduce((sum, each) => sum + answerLog(each, scale, bench * grid[i]!, coat * coat), log))
 }
 
@@ -95,34 +92,42 @@ function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale 
   return eitherOr(together, tests.reduce((sum, each) => sum + answerLog(each, scales[each.rung]!, 0, 1), 0))
 }
 
+/** How far the evidence for evenness must lead, in ln, before it counts as much as the sheet. */
+const leadWanted = 0.25
+/** How sharply it is chosen about there. */
+const steepness = 4
+/** Of the evidence for scatter, the part that takes the sheet's middle for the bench's own. */
+const onSheetPart = 0.2
+
 /**
- * Chances of the divisions given all tests: how even a bench is shows on every rung it tests. Rungs often go together, on a bench and on a coat, and sometimes do not:
- * each division weighs both. Counted test by test alone, a coat tested on five rungs would speak five times.
+ * Share of the even division in a chance's time, 0..1, from all tests: how even a bench is shows on every rung it tests. Rungs often go together, on a bench and on a coat,
+ * and sometimes do not: each evidence weighs both. Counted test by test alone, a coat tested on five rungs would speak five times.
  */
-function weighed(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], rungs: readonly (readonly Float64Array[])[]): number[] {
-  const logs = divisions.map(({ bench, coat, weight }, d) => Math.log(weight) + (bench < coat ? coatEvidence(tests, scales) : benchEvidence(rungs.map(own => own[d]!))))
-  const best = Math.max(...logs)
-  const raw = logs.map(log => Math.exp(log - best))
-  const all = raw.reduce((sum, w) => sum + w, 0)
-  return raw.map(w => w / all)
+function evenShare(tests: readonly BenchTest[], scales: readonly (SheetScale | null)[], rungs: readonly { even: Float64Array, off: Float64Array }[]): number {
+  const scatter = onSheetPart * coatEvidence(tests, scales) + (1 - onSheetPart) * benchEvidence(rungs.map(rung => rung.off))
+  return 1 / (1 + Math.exp(-steepness * (benchEvidence(rungs.map(rung => rung.even)) - scatter - leadWanted)))
 }
 
-/** Of what a bench's tests leave in doubt about a rung, the share that all its coats have in common, 0..1; the rest is each coat's own. `parts` as `learnBench` made them. */
-export function benchShare(parts: Mixture): number {
+/** Of what a bench's tests leave in doubt about a rung, the share that all its coats have in common, 0..1; the rest is each coat's own. `ways` as `learnBench` made them. */
+export function benchShare(ways: readonly LearnedWay[]): number {
+  const parts = ways.flatMap(way => way.parts.map(part => ({ ...part, weight: part.weight * way.share })))
   const mean = parts.reduce((sum, part) => sum + part.weight * part.mean, 0)
   const common = parts.reduce((sum, part) => sum + part.weight * (part.mean - mean) ** 2, 0)
   return common / (common + parts.reduce((sum, part) => sum + part.weight * part.variance, 0))
 }
 
+/** A tested rung as one division has it. */
+interface Told { share: number, division: Division, own: Posterior }
+
 /** How much longer than the sheet the tested rungs take, each counting by the share of its doubt that tests have taken away. */
-function speedBand(rungs: readonly { scale: SheetScale, own: readonly Posterior[] }[], weights: readonly number[]): SpeedBand {
+function speedBand(rungs: readonly { scale: SheetScale, ways: readonly Told[] }[]): SpeedBand {
   let all = 0
   let middle = 0
   let variance = 0
-  for (const { scale, own } of rungs) {
-    const mean = weights.reduce((sum, w, d) => sum + w * divisions[d]!.bench * own[d]!.mean, 0)
-    const spread = weights.reduce((sum, w, d) => sum + w * divisions[d]!.bench ** 2 * (own[d]!.variance + own[d]!.mean ** 2), 0) - mean * mean
-    const known = weights.reduce((sum, w, d) => sum + w * Math.max(0, 1 - own[d]!.variance), 0)
+  for (const { scale, ways } of rungs) {
+    const mean = ways.reduce((sum, { share, division, own }) => sum + share * division.bench * own.mean, 0)
+    const spread = ways.reduce((sum, { share, division, own }) => sum + share * division.bench ** 2 * (own.variance + own.mean ** 2), 0) - mean * mean
+    const known = ways.reduce((sum, { share, own }) => sum + share * Math.max(0, 1 - own.variance), 0)
     const side = mean > 0 ? scale.late : scale.early
     all += known
     middle += known * side * mean
@@ -136,9 +141,9 @@ function speedBand(rungs: readonly { scale: SheetScale, own: readonly Posterior[
 /** Chances under this are left out of a rung's mixture. */
 const leastChance = 1e-12
 
-/** A rung's scores: every offset of every division, with what its coats add. */
-function mixed(own: readonly Posterior[], weights: readonly number[]): Mixture {
-  return divisions.flatMap(({ bench, coat }, d) => Array.from(own[d]!.chances, (p, i) => ({ weight: weights[d]! * p, mean: bench * grid[i]!, variance: coat * coat })).filter(part => part.weight > leastChance))
+/** A rung's scores under one division: every offset, with what its coats add. */
+function wayOf({ share, division: { bench, coat }, own }: Told): LearnedWay {
+  return { share, parts: Array.from(own.chances, (p, i) => ({ weight: p, mean: bench * grid[i]!, variance: coat * coat })).filter(part => part.weight > leastChance) }
 }
 
 /**
@@ -154,11 +159,17 @@ export function learnBench(quantiles: readonly QuantileTable[], tests: readonly 
   const rungs = quantiles.map((table, k) => {
     if (!counted.some(test => test.rung === k)) return null
     const scale = sheetScale(table)
-    const logs = divisions.map(division => told(prior, settled.filter(test => test.rung === k), scale, division))
-    return { scale, logs, own: divisions.map((division, d) => posterior(told(logs[d]!, since.filter(test => test.rung === k), scale, division))) }
+    const [own, later] = [settled, since].map(all => all.filter(test => test.rung === k)) as [BenchTest[], BenchTest[]]
+    const of = (division: Division) => told(prior, own, scale, division)
+    return { scale, even: of(even), scattered: of(scattered), off: of(offAndScattered), later }
   })
   const tested = rungs.filter(rung => rung !== null)
   if (tested.length === 0) return sheetSpeed
-  const weights = weighed(settled, rungs.map(rung => rung && rung.scale), tested.map(rung => rung.logs))
-  return { kind: 'learned', rungs: rungs.map(rung => rung && { parts: mixed(rung.own, weights) }), speed: speedBand(tested, weights) }
+  const share = evenShare(settled, rungs.map(rung => rung && rung.scale), tested)
+  const learned = rungs.map(rung => rung && {
+    scale: rung.scale,
+    ways: [{ share, division: even, logs: rung.even }, { share: 1 - share, division: scattered, logs: rung.scattered }]
+      .map(({ logs, ...way }): Told => ({ ...way, own: posterior(told(logs, rung.later, rung.scale, way.division)) })),
+  })
+  return { kind: 'learned', rungs: learned.map(rung => rung && { ways: rung.ways.map(wayOf) }), speed: speedBand(learned.filter(rung => rung !== null)) }
 }

@@ -11,7 +11,7 @@ import type { Curve, DoubtfulWait, Spread } from '#shared/promise/types'
 export function spreadOf(table: QuantileTable, extra: number): Spread {
   const { plus2, minus2, tau2 } = table.doubt
   if (!table.learned) return { kind: 'sheet', bench: Math.sqrt(tau2), late: Math.sqrt(plus2 + extra), early: Math.sqrt(minus2 + extra) }
-  const common = benchShare(table.learned.parts)
+  const common = benchShare(table.learned.ways)
   return { kind: 'score', bench: Math.sqrt(common), own: Math.sqrt(1 - common), points: ([0, 1, 2, 3] as const).map(chance => tabledQuantile(table, chance, extra)) }
 }
 

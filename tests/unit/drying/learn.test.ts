@@ -46,24 +46,25 @@ describe('what a bench learns from its tests', () => {
     expect(Math.abs(q(scattered, 1, 1))).toBeLessThan(0.1)
   })
 
-  /** Weight and mean of the division whose coats have this variance, out of a rung's mixture. */
+  /** Share and mean of the way whose coats have this variance, of a rung. */
   const division = (given: BenchTest[], variance: number) => {
     const bench = learnBench(sheet.rungs.map(r => r.quantiles), given)
     if (bench.kind !== 'learned') throw new Error('Tests teach something.')
-    const mine = bench.rungs[1]!.parts.filter(part => Math.abs(part.variance - variance) < 1e-9)
-    const weight = mine.reduce((sum, part) => sum + part.weight, 0)
-    return { weight, mean: mine.reduce((sum, part) => sum + part.weight * part.mean, 0) / weight }
+    const { share, parts } = bench.rungs[1]!.ways.find(way => Math.abs(way.parts[0]!.variance - variance) < 1e-9)!
+    return { share, mean: parts.reduce((sum, part) => sum + part.weight * part.mean, 0) }
   }
+  /** Share of the even way by how far the ln of its evidence leads. */
+  const shareAt = (lead: number) => 1 / (1 + Math.exp(-4 * (lead - 0.25)))
 
   it('agrees with the closed form after one bound at the sheet\'s middle', () => {
     // Offset u ~ N(0, 1), next to it a coat of variance 1 - b²: given "not yet" at the middle the mean of u is b x 2 phi(0) = 0.79788 b.
-    // Three answers in a hundred say nothing: 0.97 of that. The bench's part is b u: b² = 0.97 for the even bench, 0.05 for the one on its sheet, 0.5 for the one half-way.
+    // Three answers in a hundred say nothing: 0.97 of that. The bench's part is b u: b² = 0.985 for the even bench, 0.05 for the one on its sheet.
     const given = [test(q(sheet, 1, 1), false)]
-    expect(division(given, 0.03).mean).toBeCloseTo(0.97 * 0.79788 * 0.97, 3)
-    expect(division(given, 0.5).mean).toBeCloseTo(0.5 * 0.79788 * 0.97, 3)
+    expect(division(given, 0.015).mean).toBeCloseTo(0.985 * 0.79788 * 0.97, 3)
     expect(division(given, 0.95).mean).toBeCloseTo(0.05 * 0.79788 * 0.97, 3)
-    // One bound tells none from another: the weights stay as they were.
-    expect(division(given, 0.03).weight).toBeCloseTo(0.6, 6)
+    // One bound tells none from another: no evidence leads.
+    expect(division(given, 0.015).share).toBeCloseTo(shareAt(0), 6)
+    expect(division(given, 0.95).share).toBeCloseTo(1 - shareAt(0), 6)
   })
 
   it.each([-1, -0.4, 0.7, 1.2])('agrees with the closed form after one bound at %f of the band', (a) => {
@@ -72,16 +73,18 @@ describe('what a bench learns from its tests', () => {
     const weight = 0.97 * tail / (0.97 * tail + 0.03 / 2)
     const scale = sheetScale(sheet.rungs[1]!.quantiles)
     // The part is b times the offset.
-    expect(division([test(scale.middle + a * (a > 0 ? scale.late : scale.early), false)], 0.03).mean).toBeCloseTo(0.97 * weight * density(a) / tail, 2)
+    expect(division([test(scale.middle + a * (a > 0 ? scale.late : scale.early), false)], 0.015).mean).toBeCloseTo(0.985 * weight * density(a) / tail, 2)
   })
 
-  it('weighs the divisions by the closed form when two coats disagree at the sheet\'s middle', () => {
+  it('chooses between the divisions by the closed form when two coats disagree at the sheet\'s middle', () => {
     // Two scores of correlation r lie on different sides of their middle with chance 1/4 - asin(r) / 2 pi, in a given order; an answer says something 97 times in a hundred.
-    const disagree = (r: number) => 0.97 ** 2 * (0.25 - Math.asin(r) / (2 * Math.PI)) + (1 - 0.97 ** 2) / 4
-    const raw = [0.6 * disagree(0.97), 0.3 * disagree(0), 0.1 * disagree(0.5)]
-    const sum = raw.reduce((all, each) => all + each, 0)
+    const disagree = (r: number) => Math.log(0.97 ** 2 * (0.25 - Math.asin(r) / (2 * Math.PI)) + (1 - 0.97 ** 2) / 4)
+    // Even: 0.985 of its variance in common. Scattered on its sheet: nothing in common. Off and scattered: 0.985 of 0.985 + 0.95.
+    const lead = disagree(0.985) - 0.2 * disagree(0) - 0.8 * disagree(0.985 / 1.935)
     const given = [test(q(sheet, 1, 1), false), test(q(sheet, 1, 1), true)]
-    for (const [d, variance] of [0.03, 0.95, 0.5].entries()) expect(division(given, variance).weight).toBeCloseTo(raw[d]! / sum, 2)
+    expect(lead).toBeLessThan(-0.5)
+    expect(division(given, 0.015).share).toBeCloseTo(shareAt(lead), 3)
+    expect(division(given, 0.95).share).toBeCloseTo(1 - shareAt(lead), 3)
   })
 
   it('says what the sheet says, at every chance and doubt, while its tests say nothing', () => {
@@ -115,11 +118,11 @@ describe('what a bench learns from its tests', () => {
   })
 
   it('counts what a "not yet" shows about evenness from the next "reached" on', () => {
-    const even = bracket(0.3, 0.08, 6)
-    const weight = (given: BenchTest[]) => division(given, 0.03).weight
+    const even = bracket(0.3, 0.08, 2)
+    const share = (given: BenchTest[]) => division(given, 0.015).share
     const agreeing = test(0.2, false)
-    expect(weight([...even, agreeing])).toBeCloseTo(weight(even), 6)
-    expect(weight([...even, agreeing, test(1, true)])).toBeGreaterThan(weight([...even, test(1, true)]))
+    expect(share([...even, agreeing])).toBeCloseTo(share(even), 6)
+    expect(share([...even, agreeing, test(1, true)])).toBeGreaterThan(share([...even, test(1, true)]))
   })
 
   it('keeps the chances of a rung in order', () => {
