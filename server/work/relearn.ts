@@ -1,5 +1,5 @@
-import { and, asc, eq, gt, inArray, isNotNull } from 'drizzle-orm'
-import { benchSpeed, coat, materialVersion, studio, tin, touchTest } from '~~/db/schema'
+import { and, asc, count, eq, gt, inArray, isNotNull, max } from 'drizzle-orm'
+import { benchSpeed, coat, materialVersion, readingImport, studio, tin, touchTest } from '~~/db/schema'
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { airOf, roomAirs } from '~~/server/work/air'
@@ -17,9 +17,9 @@ const openMs = 15 * 86_400_000
 interface TestRow { test: typeof touchTest.$inferSelect, coat: CoatRow }
 
 /**
- * Learns anew what the tests of some pieces, or of all, teach about their materials, where a test, its coat, a tin or a reset changed or
- * a year has gone by. Gives the editions whose teaching changed. A new reading alone does not: it moves the films, and tests of the
- * last 15 days are worked out again when the lesson next changes; older ones keep their bound.
+ * Learns anew what the tests of some pieces, or of all, teach about their materials, where a test, its coat, a tin or a reset changed, a logger's
+ * file came in or was taken back, or a year has gone by. Gives the editions whose teaching changed. A single reading does not: it moves the films, and tests of the
+ * last 15 days are worked out again when the lesson next changes; older ones keep their bound until a file tells of their air.
  */
 export function relearn(tx: Transaction, studioId: number, pieceIds: readonly number[] | null, now: number): number[] {
   const versions = tx.selectDistinct({ id: coat.materialVersionId }).from(coat).innerJoin(touchTest, eq(touchTest.coatId, coat.id))
@@ -39,10 +39,11 @@ function relearnOne(tx: Transaction, studioId: number, versionId: number, now: n
     .where(and(scoped(touchTest, studioId, inArray(coat.materialVersionId, editionsInUse(tx, studioId).fellowsOf(versionId))), known?.resetAt ? gt(touchTest.at, known.resetAt) : undefined)).orderBy(asc(touchTest.id)).all()
   const weights = weightsOf(tx, studioId, versionId, rows, now)
   const lines = rows.map((row, i) => `${lineOf(row)} ${weights[i]!.toFixed(2)}`)
-  const signature = lines.join(';')
+  const files = filesOf(tx, studioId)
+  const signature = [files, ...lines].join(';')
   const state = benchState(known?.state)
   if ((state?.signature ?? '') === signature) return false
-  const tests = boundsOf(tx, studioId, versionId, rows, weights, keptOf(state, rows, now), now)
+  const tests = boundsOf(tx, studioId, versionId, rows, weights, keptOf(state, files, rows, now), now)
   const values = { state: { signature, tests }, tests: tests.length, actIdUpto: rows.at(-1)?.test.actId ?? null }
   if (known) tx.update(benchSpeed).set(values).where(scoped(benchSpeed, studioId, eq(benchSpeed.id, known.id))).run()
   else tx.insert(benchSpeed).values({ studioId, materialVersionId: versionId, ...values }).run()
@@ -50,6 +51,12 @@ function relearnOne(tx: Transaction, studioId: number, versionId: number, now: n
 }
 
 const lineOf = ({ test, coat: on }: TestRow) => `${test.id} ${test.milestone} ${test.at} ${test.reached} ${test.byRole} ${on.id} ${on.endedAt} ${on.size} ${on.ground} ${on.forced}`
+
+/** Which files of loggers stand: one that comes late tells of the air that old tests were made in. */
+function filesOf(tx: Transaction, studioId: number): string {
+  const found = tx.select({ files: count(), last: max(readingImport.id) }).from(readingImport).where(scoped(readingImport, studioId)).get()
+  return `files ${found?.files ?? 0} ${found?.last ?? 0}`
+}
 
 /** One word about a whole row counts once, shared out among its coats; age and new tins take from it. */
 function weightsOf(tx: Transaction, studioId: number, versionId: number, rows: readonly TestRow[], now: number): number[] {
@@ -60,11 +67,12 @@ function weightsOf(tx: Transaction, studioId: number, versionId: number, rows: r
   return rows.map(({ test }) => weightOf(test.at, now, tins) / fellows.get(test.actId)!)
 }
 
-/** Bounds that were worked out before and cannot have changed since: those of coats too old to be corrected. */
-function keptOf(state: ReturnType<typeof benchState>, rows: readonly TestRow[], now: number): Map<number, KeptTest> {
-  const lines = new Set((state?.signature ?? '').split(';').map(line => line.slice(0, line.lastIndexOf(' '))))
+/** Bounds that were worked out before and cannot have changed since: those of coats too old to be corrected, under the same files. */
+function keptOf(state: ReturnType<typeof benchState>, files: string, rows: readonly TestRow[], now: number): Map<number, KeptTest> {
+  if (!state?.signature.startsWith(`${files};`)) return new Map()
+  const lines = new Set(state.signature.split(';').map(line => line.slice(0, line.lastIndexOf(' '))))
   const old = new Set(rows.filter(row => row.test.at < now - openMs && lines.has(lineOf(row))).map(row => row.test.id))
-  return new Map((state?.tests ?? []).filter(test => old.has(test.testId)).map(test => [test.testId, test]))
+  return new Map(state.tests.filter(test => old.has(test.testId)).map(test => [test.testId, test]))
 }
 
 function boundsOf(tx: Transaction, studioId: number, versionId: number, rows: readonly TestRow[], weights: readonly number[], kept: ReadonlyMap<number, KeptTest>, now: number): KeptTest[] {

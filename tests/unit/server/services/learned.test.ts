@@ -5,6 +5,7 @@ import { recordAct } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { learnedPart, openTin, resetLearned } from '~~/server/services/learned'
 import { pieceStates } from '~~/server/services/piece-states'
+import { bringInFile, removeImport } from '~~/server/services/reading-imports'
 import { isRefusal } from '~~/server/utils/errors'
 import type { ActRequest } from '#shared/schemas/act'
 import type { LearnedWire } from '#shared/schemas/learned'
@@ -115,5 +116,21 @@ describe('what the tests of one piece teach', () => {
     openTin(db, studioId, members.owner, materialId, later)
     expect(learned().rungs.find(each => each.name === milestone)!.tests.map(each => each.weight)).toEqual([0.5])
     expect(db.select().from(benchSpeed).all()).toHaveLength(1)
+  })
+
+  it('reads an old test anew in the air that a file tells of later, and as before when the file is taken back', () => {
+    const { db, studioId, members, rooms, ids, tell, learned, milestone, typical } = threeCovers()
+    const at = now + Math.round(1.2 * typical)
+    tell('touch test', [ids[0]!], at, { milestone, reached: false })
+    const minutes = () => learned().rungs.find(each => each.name === milestone)!.tests[0]!.minutes
+    const guessed = minutes()
+    // Twenty days on, a logger that hung there says the room was cold: the film had gained far less by then.
+    const later = now + 20 * 24 * hour
+    const times = Array.from({ length: 60 }, (_, i) => now - hour + i * (at - now + 2 * hour) / 59).map(Math.round)
+    const brought = bringInFile(db, studioId, members.maker.id, rooms.bench, { clientKey: 'cold-file', fileName: 'cold.csv', times, temps: times.map(() => 12), humidities: times.map(() => 0.7) }, later)
+    if (!brought.ok || brought.importId === null) throw new Error('The file was not brought in.')
+    expect(minutes()).toBeLessThan(guessed * 0.85)
+    removeImport(db, studioId, { ...members.maker, role: 'maker' }, brought.importId, later)
+    expect(minutes()).toBeCloseTo(guessed, 6)
   })
 })
