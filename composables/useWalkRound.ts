@@ -21,14 +21,18 @@ export function useWalkRound({ say, busy, studio }: ReturnType<typeof provideTel
     found.value = []
     tapped.value = stop.value?.expected.filter(each => each.missing).map(each => each.piece.id) ?? []
   }
-  const tell = (kind: 'seen' | 'not there', all: readonly Expected[]) => say({ kind, body: {}, pieces: all.map(each => each.piece), partIds: all.flatMap(each => each.partIds), doneAt: studio.now.value })
+  /** Whether it was taken, or kept for later. */
+  async function tell(kind: 'seen' | 'not there', all: readonly Expected[]): Promise<boolean> {
+    if (all.length === 0) return true
+    const line = await say({ kind, body: {}, pieces: all.map(each => each.piece), partIds: all.flatMap(each => each.partIds), doneAt: studio.now.value })
+    return line?.state !== 'refused'
+  }
 
   async function note() {
     if (busy.value || !stop.value) return
     const [away, present] = [missing.value, here.value]
-    if (present.length > 0) await tell('seen', present)
-    if (away.length > 0) await tell('not there', away)
-    go(at.value + 1)
+    // A refusal keeps the shelf: walked on from, its red line would soon be under those of the next.
+    if (await tell('seen', present) && await tell('not there', away)) go(at.value + 1)
   }
   async function moveHere() {
     const placeId = stop.value?.place.id

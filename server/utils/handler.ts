@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto'
-import { createError, defineEventHandler, getQuery, getRouterParams, isError, readBody, setResponseHeader } from 'h3'
+import { createError, defineEventHandler, getHeader, getQuery, getRouterParams, isError, readBody, readFormData, setResponseHeader } from 'h3'
 import type { EventHandlerRequest, H3Event } from 'h3'
 import { core } from 'zod/mini'
 import { readBench } from '~~/server/services/bench-access'
@@ -8,6 +8,7 @@ import { useDatabase } from '~~/server/utils/database'
 import type { Database } from '~~/server/utils/database'
 import { absent, isRefusal, malformed, notAllowed, notSignedIn, toHttp } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
+import { loggedPath } from '~~/server/utils/logged-path'
 import { asksAsBench, findAccess, findBenchToken, findWallToken, readWall } from '~~/server/utils/session'
 import { may } from '#shared/permissions'
 import type { Permission } from '#shared/permissions'
@@ -97,19 +98,21 @@ function parse<S>(schema: S | undefined, value: unknown, refuse: (fields: Record
   return result.data as Parsed<S>
 }
 
-async function readJson(event: H3Event): Promise<unknown> {
+/** JSON or form fields of either encoding: what sends figures from a shelf is often no browser. */
+async function readFields(event: H3Event): Promise<unknown> {
   try {
+    if (getHeader(event, 'content-type')?.startsWith('multipart/form-data')) return Object.fromEntries(await readFormData(event))
     return await readBody<unknown>(event, { strict: true })
   }
   catch {
-    throw toHttp(malformed({ form: refusals.notJson }, refusals.notJson))
+    throw toHttp(malformed({ form: refusals.notFields }, refusals.notFields))
   }
 }
 
 /** Logs what nobody foresaw once, under a number the person is given, and shows nothing of it. */
 function noteUnexpected(event: H3Event, error: unknown) {
   const requestId = randomUUID().slice(0, 8)
-  console.error(`[${requestId}] ${event.method} ${event.path.replace(/([?&]wall=|\/wall\/|\/calendar\/|\/sensor\/|\/reset\/|\/join\/)[^/&?]+/, '$1…')}`, error)
+  console.error(`[${requestId}] ${event.method} ${loggedPath(event.path)}`, error)
   return createError({ statusCode: 500, statusMessage: 'unexpected', message: refusals.unexpected(requestId), data: { reason: 'unexpected', message: refusals.unexpected(requestId), requestId } })
 }
 
@@ -127,7 +130,7 @@ export function defineStudioHandler<M extends May, R, P extends Schema | undefin
       setResponseHeader(event, 'cache-control', 'no-store')
       const params = parse(route.params, getRouterParams(event, { decode: true }), () => absent())
       const query = parse(route.query, getQuery(event), malformed)
-      const body = parse(route.body, route.body ? await readJson(event) : undefined, malformed)
+      const body = parse(route.body, route.body ? await readFields(event) : undefined, malformed)
       // `admit` has just proved what AccessFor promises for this route.
       const answer = await route.run({ ...access as AccessFor<M>, db, now, params, query, body, event })
       if (isRefusal(answer)) throw toHttp(answer)

@@ -7,6 +7,6 @@ export const refusals = {
   foreignOrigin: 'This request came from another site and was not carried out.',
   tooMany: 'Too many tries. Wait a few minutes, then try again.',
   malformed: 'Some of this could not be read. See the marked fields.',
-  notJson: 'The body of the request must be JSON.',
+  notFields: 'The body of the request must be JSON or form fields.',
   unexpected: (requestId: string) => `Something went wrong here and has been noted as ${requestId}. Nothing you typed is lost.`,
 } as const

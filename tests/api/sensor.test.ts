@@ -26,8 +26,12 @@ describe('a sensor, with nothing but its address', () => {
   it('tells the air as JSON and as form fields', async () => {
     expect(await send('{"temperature": 12.5, "humidity": 81}', 'application/json')).toEqual({ status: 200, body: { ok: true, kept: true } })
     expect(await send('temp=16&rh=60', 'application/x-www-form-urlencoded')).toEqual({ status: 200, body: { ok: true, kept: true } })
+    const form = new FormData()
+    form.set('temp', '17')
+    form.set('rh', '62')
+    expect((await fetch(address, { method: 'POST', body: form })).status).toBe(200)
     const { body } = await owner.get<{ tempC: number, rh: number, source: string }[]>(`/api/rooms/${room}/readings`)
-    expect(body).toMatchObject([{ tempC: 16, rh: 0.6, source: 'sensor' }])
+    expect(body).toMatchObject([{ tempC: 17, rh: 0.62, source: 'sensor' }])
   })
   it('is told in a sentence what was nonsense, and so is whoever looks after it', async () => {
     expect(await send('{"humidity": 0.6}', 'application/json')).toMatchObject({ status: 400, body: { message: 'Send the humidity in per cent, 1 to 100, as "humidity".' } })
@@ -39,5 +43,9 @@ describe('a sensor, with nothing but its address', () => {
     expect((await send('{"humidity": 60}', 'application/json')).status).toBe(429)
     const unknown = await fetch(`${server.origin}/api/sensor/${'x'.repeat(43)}`, { method: 'POST', headers: { 'content-type': 'application/json' }, body: '{"humidity": 60}' })
     expect(unknown.status).toBe(404)
+  })
+  it('asked with another method is no address, and its secret stays out of the log', async () => {
+    for (const method of ['GET', 'PUT']) expect((await fetch(address, { method })).status).toBe(404)
+    expect(server.log()).not.toContain(address.split('/').at(-1))
   })
 })

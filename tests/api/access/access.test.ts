@@ -53,6 +53,12 @@ describe('the table of routes', () => {
   })
 })
 
+describe('an address that is no route', () => {
+  it.each(['GET', 'POST'])('is absent for %s, to whoever asks', async (method) => {
+    for (const who of [people.nobody, people.owner]) expect(await who.send(method, '/api/no/such/thing', method === 'GET' ? undefined : {})).toMatchObject({ status: 404, body: { data: { reason: 'absent' } } })
+  })
+})
+
 describe('somebody not signed in', () => {
   it.each(entries.filter(([, route]) => route.least !== 'anyone'))('is told to sign in by %s', async (file, route) => {
     expect((await ask(people.nobody, file, route)).status).toBe(401)
