@@ -12,7 +12,7 @@ export const entry = {
   forgottenSays: 'Give the address you sign in with. A mail with a link comes to it.',
   forgottenAct: 'Send the link',
   forgottenSent: (email: string) => `If somebody with the address ${email} belongs here, a mail is on its way. Its link opens for an hour.`,
-  noMail: 'This server sends no mail. Whoever looks after it makes a link for you: npm run password-link, with your address after it.',
+  noMail: 'No mail goes out from here, so no link can be sent. Ask whoever set Stillwet up for your studio: they can make a link for you to choose a new password.',
   resetFor: (email: string) => `For ${email}. Other browsers that are signed in with it are signed out.`,
   resetAct: 'Keep this password',
   resetAbsent: 'This link has been used or has run out. Ask for a new one.',
