@@ -8,6 +8,7 @@ import { slippingPromises } from '~~/server/services/promises'
 import { peak, placeUses } from '~~/server/services/week-places'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { lateCause } from '#shared/planning/late-cause'
 import type { BatchLoad, Evidence, Load, PersonLoad, PlaceLoad, WeekDay, WeekState } from '#shared/schemas/week'
 import { addDays, localDate, localDay, studioZone, weekdayOf } from '#shared/time'
 import type { StudioZone } from '#shared/time'
@@ -121,8 +122,18 @@ function batchLoads(db: Database, facts: PlanFacts, now: number): BatchLoad[] {
     const planned = turns.flatMap(turn => entries.get(turn.id) ?? [])
     const whole = turns.length > 0 && planned.length === turns.length
     const endsAt = whole ? Math.max(...planned.map(entry => entry.endsAt)) : null
-    return [{ ...row, pieces: pieces.length, endsAt, latestAt: endsAt === null ? null : endsAt + (doubts.get(row.id) ?? 0), left: turns.length, without: turns.length - planned.length, slipping: slipping.get(orderId ?? 0) ?? null }]
+    return [{ ...row, pieces: pieces.length, endsAt, latestAt: endsAt === null ? null : endsAt + (doubts.get(row.id) ?? 0), left: turns.length, without: turns.length - planned.length, slipping: slipping.get(orderId ?? 0) ?? null, late: endsAt === null || row.dueAt === null || endsAt <= row.dueAt ? null : lateCause(lastPiece(turns, entries, pieceOf), row.dueAt, now) }]
   })
+}
+
+/** What is planned of the piece of a batch that ends last. */
+function lastPiece(turns: PlanFacts['turns'], entries: ReadonlyMap<number, PlanFacts['last'][number]>, pieceOf: ReadonlyMap<number, number>) {
+  const planned = turns.flatMap((turn) => {
+    const entry = entries.get(turn.id)
+    return entry ? [{ piece: pieceOf.get(turn.stepId), entry }] : []
+  })
+  const last = planned.reduce<typeof planned[number] | undefined>((late, each) => (late === undefined || each.entry.endsAt > late.entry.endsAt ? each : late), undefined)
+  return planned.filter(each => each.piece === last?.piece).map(each => each.entry)
 }
 
 /** By batch: how much later than nine in ten the slowest of its films may still come to the rung it is on the way to, ms. */

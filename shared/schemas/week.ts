@@ -1,3 +1,4 @@
+import type { LateCause } from '#shared/planning/late-cause'
 import type { PromiseStanding } from '#shared/schemas/promise'
 import type { PlaceKind } from '#shared/terms'
 
@@ -26,6 +27,8 @@ export interface BatchLoad {
   left: number
   without: number
   slipping: PromiseStanding | null
+  /** Why it is planned past its date; null where it is not. */
+  late: LateCause | null
 }
 
 /** What the page rests on, and how old it is. */

@@ -125,6 +125,13 @@ export function standingText(batch: BatchLoad): string {
   }
 }
 
+/** Why a batch is planned past its date, where that is no news of today: with hands at once it would be late too, or it waits for them. Null where it is in time. */
+export function lateReason({ late }: Pick<BatchLoad, 'late'>): string | null {
+  if (late === null) return null
+  if (late.code === 'gone by') return 'That date has gone by.'
+  return late.code === 'takes longer' ? 'Its waits and its work take longer than that date leaves, even with hands at once.' : `It waits ${lateText(late.heldMs)} in all for hands, open hours or places.`
+}
+
 /** To the half day at the coarsest: a whole day would stand a day away from the lateness beside it. */
 const mostDoubt = 6 * 86_400_000
 

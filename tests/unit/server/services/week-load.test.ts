@@ -6,7 +6,7 @@ import { weekLoad } from '~~/server/services/week-load'
 import { peak } from '~~/server/services/week-places'
 import type { Use } from '~~/server/services/week-places'
 import { fullest } from '#shared/fullest'
-import { fullestSentence, lateSentence, placeKindsText, standingOf, standingText } from '#shared/words/week'
+import { fullestSentence, lateReason, lateSentence, placeKindsText, standingOf, standingText } from '#shared/words/week'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday at ten, in UTC.
@@ -65,6 +65,8 @@ describe('the plan against hours and places', () => {
     const ample = (await studioWith('painted-waxed-box', 2, now + 60 * 24 * hour)).week.batches[0]
     if (!early || !ample) throw new Error('The batch is missing.')
     expect(early.endsAt).toBe(ample.endsAt)
+    expect([early.late, ample.late]).toEqual([{ code: 'takes longer' }, null])
+    expect(lateReason(early)).toBe('Its waits and its work take longer than that date leaves, even with hands at once.')
     expect([standingOf(early), standingOf(ample)]).toEqual(['late', 'in time'])
     expect(standingText({ ...early, dueAt: 0, endsAt: 36 * hour })).toBe('1.5 days late')
     expect(standingText({ ...early, dueAt: 0, endsAt: 20 * minute })).toBe('20 min late')
@@ -110,7 +112,7 @@ describe('the sentence at the top', () => {
     expect(Object.values(fullestSentence(fullest({ people, places: [] }, 'People', placeKindsText), days)).join(' ')).toBe('Oda is over full today. At the worst 10 h of 9 h: somebody else must do it, or it waits.')
   })
   it('counts the batches planned past their dates, and names the furthest', () => {
-    const batch = { id: 1, name: 'Ledgers', pieces: 2, order: null, beganAt: 0, dueAt: 10 * day, endsAt: 12 * day, latestAt: null, left: 3, without: 0, slipping: null }
+    const batch = { id: 1, name: 'Ledgers', pieces: 2, order: null, beganAt: 0, dueAt: 10 * day, endsAt: 12 * day, latestAt: null, left: 3, without: 0, slipping: null, late: null }
     expect(lateSentence([{ ...batch, endsAt: 9 * day }, { ...batch, dueAt: null }])).toBeNull()
     expect(lateSentence([batch, { ...batch, endsAt: 9 * day }])).toBe('1 of 2 batches is planned past its date: Ledgers, 2 days late.')
     expect(lateSentence([batch, { ...batch, name: 'Trays', endsAt: 13 * day }])).toBe('2 of 2 batches are planned past their date; the furthest is Trays, 3 days late.')
