@@ -118,6 +118,16 @@ export function requestOf(draft: StartDraft, names: readonly string[], startsAt:
   }
 }
 
+/** What the sentence of a field is about, as it is typed now: one about an order can be mended by the date that asked for it. */
+export function typedFor(draft: StartDraft, names: readonly string[], field: string): unknown {
+  const { scheduleId, name, sizeUnits, placeId, areaM2 } = draft
+  if (field.startsWith('pieces')) return [draft.count, names]
+  if (field.startsWith('part')) return [scheduleId, draft.shape, draft.partRows]
+  if (field.startsWith('order')) return [draft.orderName, draft.dueDay, draft.dueTime, draft.promiseAt]
+  if (field === 'startsAt') return [draft.when, draft.day, draft.time]
+  return { scheduleId, name, sizeUnits, placeId, areaM2 }[field]
+}
+
 /** What starts and dates are asked about: the batch as it is typed so far; null while something it rests on is missing. */
 export function questionOf(draft: StartDraft, count: number, startsAt: number | null, zone: StudioZone): BatchToComeRequest | null {
   const { scheduleId, placeId } = draft

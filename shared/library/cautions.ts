@@ -204,6 +204,16 @@ const topicOf = (key: CautionKey): CautionTopic => key in fire ? 'fire' : key in
 /** Every caution the library knows. Show `cautionDeferral` once after any selection of them. */
 export const cautions: readonly Caution[] = (Object.keys(texts) as CautionKey[]).map(key => ({ key, topic: topicOf(key), ...texts[key] }))
 
+/** What stands open wherever room is short: what can burn or maim at the first mistake, in the order it is read. The rest lies one press away. */
+const foremost: readonly CautionKey[] = ['ask first', 'isocyanate', 'old paint', 'green cloth', 'flames', 'oily rags', 'exotherm', 'epoxy skin', 'cyanoacrylate', 'paint stripper', 'vapour']
+
+/** Splits cautions into those that stand open and the others; where none is of the foremost, the first stands open. Together they are all of them, each once. */
+export function foldCautions<Of extends { key: string }>(given: readonly Of[]): { open: Of[], others: Of[] } {
+  const first = foremost.flatMap(key => given.filter(each => each.key === key))
+  const open = first.length > 0 ? first : given.slice(0, 1)
+  return { open, others: given.filter(each => !open.includes(each)) }
+}
+
 /** A caution by key, or null when the word is not one of ours (a studio's own row may hold any). */
 export function findCaution(key: string): Caution | null {
   return cautions.find(caution => caution.key === key) ?? null

@@ -11,6 +11,7 @@ export const controlWords = {
   on: 'on',
   off: 'off',
   caution: 'Caution.',
+  moreCautions: (count: number) => count === 1 ? '1 more caution' : `${count} more cautions`,
   note: 'Note.',
   when: 'When',
   timeNow: 'now',

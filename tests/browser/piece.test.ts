@@ -161,6 +161,10 @@ describe('starting a batch', () => {
     await page.getByRole('button', { name: 'Start the batch' }).click()
     await page.getByText('Choose a schedule, or none.').first().waitFor()
     await page.getByText('Choose a place for the pieces first.').waitFor()
+    // What is mended is said no longer, and the rest still is.
+    await page.getByLabel('Where they stand at first').selectOption({ index: 1 })
+    await page.getByText('Choose a place for the pieces first.').waitFor({ state: 'detached' })
+    await page.getByText('Choose a schedule, or none.').first().waitFor()
   })
 
   it.each(['light', 'dark'] as const)('passes axe and a narrow screen in the %s scheme', async (colorScheme) => {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { cautionDeferral, cautions, findCaution } from '#shared/library/cautions'
+import { cautionDeferral, cautions, findCaution, foldCautions } from '#shared/library/cautions'
 import type { CautionKey } from '#shared/library/cautions'
 import { libraryMaterials } from '#shared/library/index'
 import { librarySchedules } from '#shared/library/schedules'
@@ -15,6 +15,21 @@ import { sheetVapour } from '#shared/words/sheet'
 import { readingAge } from './reading-age'
 
 const carries = (keys: readonly CautionKey[], wanted: readonly CautionKey[]) => wanted.filter(key => !keys.includes(key))
+
+describe('cautions that are folded', () => {
+  it('stand open where they can burn or maim, and none is lost', () => {
+    for (const { cautions: keys } of libraryMaterials) {
+      const { open, others } = foldCautions(keys.map(key => ({ key })))
+      expect([...open, ...others].map(each => each.key).sort()).toEqual([...keys].sort())
+      expect(open.length > 0 || keys.length === 0).toBe(true)
+    }
+    const lacquer = libraryMaterials.find(each => each.key === 'nitrocellulose-lacquer')?.cautions ?? []
+    const { open, others } = foldCautions(['water vapour', ...lacquer, 'oily rags', 'ask first', 'isocyanate'].map(key => ({ key })))
+    expect(open.map(each => each.key)).toEqual(['ask first', 'isocyanate', 'flames', 'oily rags', 'vapour'])
+    expect(others.map(each => each.key)).toContain('dust mask')
+    expect(foldCautions([{ key: 'one try' }, { key: 'goes off' }])).toEqual({ open: [{ key: 'one try' }], others: [{ key: 'goes off' }] })
+  })
+})
 
 describe('cautions', () => {
   it('are carried by every material of their kind', () => {
