@@ -11,8 +11,9 @@ import { toCelsius } from '#shared/units'
 
 interface Rooms { id: number, name: string }
 
-const firstWish = () => ({
-  kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: null as number | null,
+/** As it stands before anything is typed; `units` only say in which the usual warmth of a bench room is written. */
+const firstWish = (units: Units) => ({
+  kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: (units === 'us' ? 68 : 20) as number | null,
   weekday: 6 as number | null, from: '09:00', to: '15:00', memberId: null as number | null, batchId: null as number | null, day: '', time: '12:00',
 })
 type Wish = ReturnType<typeof firstWish>
@@ -39,7 +40,7 @@ function changeOf(wish: Wish, week: WeekState, { zone }: Clock, units: Units): W
 export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () => Units) {
   const { busy, message, fields, submit } = useSubmit()
   const { busy: keeping, message: refused, submit: send } = useSubmit()
-  const wish = reactive(firstWish())
+  const wish = reactive(firstWish(units()))
   const rooms = shallowRef<Rooms[]>([])
   const answer = shallowRef<WhatIfAnswer | null>(null)
   const asked = shallowRef<WhatIf | null>(null)

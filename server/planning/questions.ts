@@ -14,7 +14,7 @@ const minute = 60_000
 /** One search of a question: so short that a page of them is answered in two seconds. */
 const questionMs = 200
 /** What is measured against another search may go as far as that one, though the machine has more to do now: a shorter search finds less. */
-const likeOtherMs = 3 * questionMs
+const likeOtherMs = 1.5 * questionMs
 
 /** Solves a copy of a problem under a small budget, with `most` schedules; null when it did not come to an end. */
 export type Ask = (problem: PlanProblem, most?: number) => Promise<Plan | null>

@@ -60,5 +60,5 @@ export function moveText(moves: readonly MovedTurn[], clock: Clock, units: Units
   const [first] = moves
   if (!first) return ''
   const what = asSentence(stepNoun(first.stepKind, first.step)).slice(0, -1)
-  return `${what} of ${groupNames(moves.map(move => move.piece))} ${moves.length === 1 ? 'moves' : 'move'} from ${at(first.wasAt, clock)} to ${at(first.isAt, clock)}: ${causeText(first.why, clock, units)}.`
+  return `${what} of ${groupNames(moves.map(move => move.piece))} moves from ${at(first.wasAt, clock)} to ${at(first.isAt, clock)}: ${causeText(first.why, clock, units)}.`
 }
