@@ -143,10 +143,10 @@ describe('quiet hours', () => {
 })
 
 describe('the body of a request', () => {
-  it('must be JSON', async () => {
+  it('must be JSON or form fields', async () => {
     const response = await fetch(`${server.origin}/api/rooms`, { method: 'POST', headers: { 'content-type': 'application/json', 'cookie': owner.cookie() }, body: '{ not json' })
     expect(response.status).toBe(400)
-    expect(await response.json()).toMatchObject({ data: { message: 'The body of the request must be JSON.' } })
+    expect(await response.json()).toMatchObject({ data: { message: 'The body of the request must be JSON or form fields.' } })
   })
   it('may hold no field nobody knows', async () => {
     const answer = await owner.patch<Refused>('/api/studio', { nmae: 'Fir Lane' })
