@@ -127,9 +127,19 @@ describe('on a phone', () => {
   })
   it.each(['Pieces', 'Hands', 'Board'])('%s says so when the studio does not answer on the way to it', async (name) => {
     const page = await at('/settings/hours', { viewport: phone })
-    await page.route('**/api/state*', route => route.fulfill({ status: 500, json: {} }))
+    let asked = 0
+    await page.route('**/api/state*', (route) => {
+      asked++
+      return route.fulfill({ status: 500, json: {} })
+    })
     if (name === 'Pieces') await page.getByRole('button', { name: 'More' }).click()
     await page.getByRole('link', { name, exact: true }).filter({ visible: true }).click()
+    await page.getByRole('alert').filter({ hasText: 'Try again' }).waitFor()
+    // The page asks once more when it is there: only then is the key what brings the pieces.
+    for (let before = -1; before !== asked;) {
+      before = asked
+      await page.waitForTimeout(1500)
+    }
     await page.getByRole('alert').filter({ hasText: 'Try again' }).waitFor()
     await page.unroute('**/api/state*')
     await page.getByRole('button', { name: 'Try again' }).click()
