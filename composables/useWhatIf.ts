@@ -11,9 +11,12 @@ import { toCelsius } from '#shared/units'
 
 interface Rooms { id: number, name: string }
 
-/** As it stands before anything is typed; `units` only say in which the usual warmth of a bench room is written. */
+/** The usual warmth of a bench room, in the studio's own degrees; a planning value. */
+export const usualWarmth = (units: Units) => units === 'us' ? 68 : 20
+
+/** As it stands before anything is typed. */
 const firstWish = (units: Units) => ({
-  kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: (units === 'us' ? 68 : 20) as number | null,
+  kind: 'places' as WhatIfKind, placeKind: null as PlaceKind | null, more: 1 as number | null, roomId: null as number | null, rh: 45 as number | null, temp: usualWarmth(units) as number | null,
   weekday: 6 as number | null, from: '09:00', to: '15:00', memberId: null as number | null, batchId: null as number | null, day: '', time: '12:00',
 })
 type Wish = ReturnType<typeof firstWish>

@@ -43,7 +43,6 @@ export class Attempt {
   readonly origin = new Map<Edge, number>()
   missed = noWindows
   dropped = noNodes
-  /** A start to be kept, by the same hands: no session is joined that would put it off. */
   private kept: Kept | null = null
   private readonly logged: Int32Array
   private readonly changed: Int32Array

@@ -1,9 +1,10 @@
 import { asc, eq, inArray, isNull } from 'drizzle-orm'
-import { material, materialFigure, materialVersion, recoatWindow } from '~~/db/schema'
+import { material, materialVersion, recoatWindow } from '~~/db/schema'
 import type { studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { dryingMaterials } from '~~/server/work/materials'
+import { sheetFigures } from '~~/server/work/sheet-figures'
 import { systemRules } from '#shared/library/systems'
 import type { ScheduleMaterialsWire, ScheduleMaterialWire } from '#shared/schemas/schedule'
 
@@ -15,13 +16,12 @@ export function scheduleMaterials(db: Database, owner: typeof studio.$inferSelec
   const versionIds = newest.map(row => row.version.id)
   const sheets = dryingMaterials(db, owner.id, versionIds)
   const windows = db.select().from(recoatWindow).where(scoped(recoatWindow, owner.id, inArray(recoatWindow.versionId, versionIds))).orderBy(asc(recoatWindow.ordinal)).all()
-  const open = db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, versionIds), eq(materialFigure.name, 'open time'))).all()
-  const openMin = new Map(open.map(each => [each.versionId, each.low ?? each.typical]))
+  const open = sheetFigures(db, owner.id, versionIds, 'open time')
   const materials = newest.flatMap(({ id, name, version }): ScheduleMaterialWire[] => {
     const drying = sheets.get(version.id)
     if (!drying) return []
     const recoveries = windows.filter(each => each.versionId === version.id).map(({ recovery, recoveryMin }) => (recovery === null ? null : { name: recovery, minutes: recoveryMin }))
-    return [{ id, name, kind: version.kind, glue: version.film === 'joint', solventBorne: !['water', 'none'].includes(version.solvent), drying, recoveries, cautions: version.cautions, openMin: openMin.get(version.id) ?? null }]
+    return [{ id, name, kind: version.kind, glue: version.film === 'joint', solventBorne: !['water', 'none'].includes(version.solvent), drying, recoveries, cautions: version.cautions, openMin: open.get(version.id)?.least ?? null }]
   })
   const numbers = (keys: readonly string[]) => newest.filter(row => row.libraryKey !== null && keys.includes(row.libraryKey)).map(row => row.id)
   const rules = systemRules.map(rule => ({ under: numbers(rule.under), over: numbers(rule.over), minMin: rule.minMin, text: rule.text })).filter(rule => rule.under.length > 0 && rule.over.length > 0)

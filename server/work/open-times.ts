@@ -1,10 +1,8 @@
-import { eq, inArray } from 'drizzle-orm'
-import { materialFigure } from '~~/db/schema'
 import type { studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
-import { scoped } from '~~/server/utils/scoped'
 import { dryingMaterials } from '~~/server/work/materials'
 import { airRead } from '~~/server/work/pots'
+import { sheetFigures } from '~~/server/work/sheet-figures'
 import { openDriver, openTimeAt } from '#shared/drying/open-time'
 import type { RoomAir } from '#shared/drying/types'
 
@@ -16,13 +14,12 @@ export interface OpenTime { least: number, room: 'cooler' | 'warmer' | null }
 
 /** How long glues of some editions stay open at an instant (ms UTC) once spread in the rooms of a studio; null where their sheets say nothing of it. */
 export function openTimesOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>) {
-  const figures = versionIds.length === 0 ? [] : db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, [...versionIds]), eq(materialFigure.name, 'open time'))).all()
-  const sheets = dryingMaterials(db, owner.id, figures.map(each => each.versionId))
+  const figures = sheetFigures(db, owner.id, versionIds, 'open time')
+  const sheets = dryingMaterials(db, owner.id, [...figures.keys()])
   return (versionId: number | null, roomId: number | null, at: number): OpenTime | null => {
-    const figure = figures.find(each => each.versionId === versionId)
-    const sheet = figure && sheets.get(figure.versionId)
+    const [figure, sheet] = [figures.get(versionId ?? 0), sheets.get(versionId ?? 0)]
     if (!figure || !sheet) return null
-    const least = figure.low ?? figure.typical
+    const { least } = figure
     const air = airRead(airs, roomId, at)
     if (air === null) return { least, room: null }
     // Hot glue stays open until it gels, and that comes sooner in the cold.

@@ -1,9 +1,7 @@
-import { eq, inArray } from 'drizzle-orm'
-import { materialFigure } from '~~/db/schema'
 import type { studio } from '~~/db/schema'
 import type { Database } from '~~/server/utils/database'
-import { scoped } from '~~/server/utils/scoped'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
+import { sheetFigures } from '~~/server/work/sheet-figures'
 import { airAt } from '#shared/air/room'
 import { potLifeAt } from '#shared/drying/pot-life'
 import { trackRoom } from '#shared/drying/tools'
@@ -21,15 +19,14 @@ export function airRead(airs: ReadonlyMap<number, RoomAir>, roomId: number | nul
 
 /** How long what is mixed of some material editions at an instant (ms UTC) lasts in the rooms of a studio; null for what does not go off in its pot. */
 export function potsOf(db: Database, owner: typeof studio.$inferSelect, versionIds: readonly number[], airs: ReadonlyMap<number, RoomAir>) {
-  const figures = versionIds.length === 0 ? [] : db.select().from(materialFigure).where(scoped(materialFigure, owner.id, inArray(materialFigure.versionId, [...versionIds]), eq(materialFigure.name, 'pot life'))).all()
-  const sheets = dryingMaterials(db, owner.id, figures.map(each => each.versionId))
+  const figures = sheetFigures(db, owner.id, versionIds, 'pot life')
+  const sheets = dryingMaterials(db, owner.id, [...figures.keys()])
   return (versionId: number | null, roomId: number | null, at: number): Pot | null => {
-    const figure = figures.find(each => each.versionId === versionId)
-    const sheet = figure && sheets.get(figure.versionId)
+    const [figure, sheet] = [figures.get(versionId ?? 0), sheets.get(versionId ?? 0)]
     if (!figure || !sheet) return null
     const tempC = airRead(airs, roomId, at)?.tempC ?? null
     const here = (minutes: number) => tempC === null ? minutes : potLifeAt(minutes, sheet.reference.tempC, tempC)
-    return { minutes: here(figure.typical), least: here(figure.low ?? figure.typical), sheetMinutes: figure.typical, tempC }
+    return { minutes: here(figure.typical), least: here(figure.least), sheetMinutes: figure.typical, tempC }
   }
 }
 
