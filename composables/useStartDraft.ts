@@ -45,8 +45,11 @@ const hasOwnParts = ({ scheduleId, shape }: StartDraft) => scheduleId === 0 && s
 
 /** The sentence that a mistake in the lines is told in, under the name of its line. */
 function partFields(draft: StartDraft): Record<string, string> {
-  const mistake = hasOwnParts(draft) ? partMistake(partRowsOf(draft)) : null
-  return mistake === null ? {} : { [mistake.row === null ? 'parts' : `part ${mistake.row}`]: partMistakes[mistake.why] }
+  const rows = partRowsOf(draft)
+  const mistake = hasOwnParts(draft) ? partMistake(rows) : null
+  if (mistake === null) return {}
+  const says = mistake.why === 'same' ? partMistakes.same(mistake.as + 1, rows[mistake.as]?.name.trim() ?? '') : partMistakes[mistake.why]
+  return { [mistake.row === null ? 'parts' : `part ${mistake.row}`]: says }
 }
 
 /** "Ledger" from "Ledgers", for a start: what one piece of a batch may be called. */
@@ -72,6 +75,7 @@ export function typedInstant(day: string, time: string, zone: StudioZone): numbe
 /** The form of a new batch, kept in this tab until it has started: a reload or a refusal loses nothing. */
 export function useStartDraft() {
   const draft = reactive(blank())
+  let keeps = true
   onMounted(() => {
     try {
       const kept: unknown = JSON.parse(sessionStorage.getItem(shelf) ?? 'null')
@@ -81,15 +85,18 @@ export function useStartDraft() {
       sessionStorage.removeItem(shelf)
     }
     draft.clientKey ||= newClientKey()
-    watch(draft, () => sessionStorage.setItem(shelf, JSON.stringify(draft)), { deep: true })
+    watch(draft, () => {
+      if (keeps) sessionStorage.setItem(shelf, JSON.stringify(draft))
+    }, { deep: true })
   })
   const stem = computed(() => draft.stem.trim() || stemOf(draft.name))
   const count = computed(() => Math.min(60, Math.max(0, Math.floor(draft.count ?? 0))))
   const names = computed(() => Array.from({ length: count.value }, (_, index) => draft.names[index] ?? (count.value === 1 ? stem.value : `${stem.value} ${index + 1}`.trim())))
 
+  /** Keeps it no longer. What is typed stands until the page is left, so that nobody takes an emptied form for one that was lost. */
   function forget() {
+    keeps = false
     sessionStorage.removeItem(shelf)
-    Object.assign(draft, { ...blank(), clientKey: newClientKey() })
   }
 
   return { draft, stem, count, names, forget }

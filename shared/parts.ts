@@ -24,7 +24,11 @@ export function partsOf(rows: readonly PartRow[]): GivenPart[] {
 }
 
 /** What is wrong with the lines: by line, and of all of them. */
-export type PartMistake = { row: number, why: 'name' | 'count' | 'same' } | { row: null, why: 'none' | 'many' }
+export type PartMistake = { row: number, why: 'name' | 'count' } | { row: number, why: 'same', as: number } | { row: null, why: 'none' | 'many' }
+
+const heard = (name: string) => name.trim().replace(/\s+/g, ' ').toLocaleLowerCase('en')
+/** The names that a line takes: its own, and those of its parts where it has several. None where it counts none. */
+const namesOf = (row: PartRow) => row.count === 0 ? [] : [...new Set([heard(row.name), ...partsOf([row]).map(part => heard(part.name))])]
 
 /** The first mistake in the lines of the form; null where there is none. */
 export function partMistake(rows: readonly PartRow[]): PartMistake | null {
@@ -32,10 +36,11 @@ export function partMistake(rows: readonly PartRow[]): PartMistake | null {
   if (nameless >= 0) return { row: nameless, why: 'name' }
   const uncounted = rows.findIndex(({ count }) => count === null || !Number.isInteger(count) || count < 0 || count > mostAlike)
   if (uncounted >= 0) return { row: uncounted, why: 'count' }
-  const names = rows.map(row => partsOf([row]).map(part => part.name.toLocaleLowerCase('en')))
-  const twice = names.findIndex((own, index) => own.some(name => names.slice(0, index).flat().includes(name)))
-  if (twice >= 0) return { row: twice, why: 'same' }
-  const total = names.flat().length
+  const names = rows.map(namesOf)
+  const firstWith = (own: readonly string[]) => names.findIndex(others => others.some(name => own.includes(name)))
+  const twice = names.findIndex((own, index) => own.length > 0 && firstWith(own) < index)
+  if (twice >= 0) return { row: twice, why: 'same', as: firstWith(names[twice] ?? []) }
+  const total = partsOf(rows).length
   return total === 0 ? { row: null, why: 'none' } : total > mostParts ? { row: null, why: 'many' } : null
 }
 

@@ -37,7 +37,7 @@ export const partWords = {
 export const partMistakes = {
   name: 'Give this part a name, such as lid.',
   count: 'Give a whole number, from 0 to 20.',
-  same: 'Another part has this name. Give this one its own.',
+  same: (other: number, name: string) => `Part ${other} is already ${lowerFirst(name)}. Give this part another name, or count it with part ${other}.`,
   none: 'Count at least one part.',
   many: 'A piece has at most 24 parts. Count some of them together.',
 } as const

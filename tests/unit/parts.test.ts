@@ -24,7 +24,10 @@ describe('the lines of the form', () => {
     expect(partMistake([row('Lid', 1.5)])).toEqual({ row: 0, why: 'count' })
     expect(partMistake([row('Lid', null)])).toEqual({ row: 0, why: 'count' })
     expect(partMistake([row('Lid', 21)])).toEqual({ row: 0, why: 'count' })
-    expect(partMistake([row('Drawer 2'), row('drawer', 2)])).toEqual({ row: 1, why: 'same' })
+    expect(partMistake([row('Drawer 2'), row('drawer', 2)])).toEqual({ row: 1, why: 'same', as: 0 })
+    expect(partMistake([row('Top'), row('Drawer', 3), row(' drawer ')])).toEqual({ row: 2, why: 'same', as: 1 })
+    expect(partMistake([row('Deep drawer', 2), row('Deep  Drawer', 2)])).toEqual({ row: 1, why: 'same', as: 0 })
+    expect(partMistake([row('Drawer', 3), row('Drawer', 0)])).toBeNull()
     expect(partMistake([row('Lid', 0)])).toEqual({ row: null, why: 'none' })
     // 20 and 5 are one more than the 24 of a piece.
     expect(partMistake([row('Section', 20), row('Plate', mostParts - 19)])).toEqual({ row: null, why: 'many' })
