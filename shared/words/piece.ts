@@ -200,6 +200,12 @@ export const plannedText = (at: number, clock: Clock) => (at < clock.now ? `was 
 /** "done Tue 9:00". */
 export const doneText = (at: number | null, clock: Clock) => (at === null ? 'done' : `done ${clockTime(at, clock)}`)
 
+/** That nothing more is begun on a piece, from its history; null where nobody cancelled what was left. */
+export function cancelledText(history: readonly Pick<ActLine, 'kind' | 'inForce' | 'doneAt' | 'detail'>[], clock: Clock): string | null {
+  const line = history.find(each => each.kind === 'cancelled' && each.inForce)
+  return line === undefined ? null : `What was left to do was cancelled ${clockTime(line.doneAt, clock)}${line.detail.reason ? `: ${asSentence(line.detail.reason)}` : '.'}`
+}
+
 /** "On its own way since Tue 9:00, from “Second varnish” on." */
 export function branchText({ fromStep, sinceAt, rejoined }: { fromStep: string, sinceAt: number, rejoined: boolean }, clock: Clock): string {
   const from = fromStep === '' ? '' : `, from ${titled(fromStep)} on`

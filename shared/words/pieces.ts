@@ -100,10 +100,10 @@ export function countText(shown: number, all: number): string {
   return shown === all ? `${all} ${noun}` : `${shown} of ${all} ${noun}`
 }
 
-/** What else is on a place, as its key says it: "3 of 12 free", "full". */
-export function freeText({ capacity, taken }: Pick<PlaceState, 'capacity' | 'taken'>): string {
+/** What a place has left for so many pieces, as its key says it: "3 of 12 free", "room for 2 of the 5", "full". */
+export function freeText({ capacity, taken }: Pick<PlaceState, 'capacity' | 'taken'>, pieces = 1): string {
   const free = capacity - taken
-  return free <= 0 ? 'full' : `${free} of ${capacity} free`
+  return free <= 0 ? 'full' : free < pieces ? `room for ${free} of the ${pieces}` : `${free} of ${capacity} free`
 }
 
 /** "Boxes, for the fair": what a piece belongs to. */

@@ -175,11 +175,16 @@ describe('batches', () => {
     await page.getByRole('button', { name: 'Panel batch, all 2' }).tap()
     await open(page, /^Cancel the batch/)
     await dialog(page).getByText(/One of them is wet or held/).waitFor()
+    await dialog(page).getByLabel('Why, if you like').fill('the order fell through')
     await dialog(page).getByRole('button', { name: 'Cancel what is left' }).tap()
-    await told(page).getByText(/^Batch cancelled\. Panels 1 and 2, /).waitFor()
+    await told(page).getByText(/^Batch cancelled: the order fell through\. Panels 1 and 2, /).waitFor()
     expect((await pieces('Panel')).map(piece => [piece.turns.length, piece.groups.flatMap(group => group.films).length])).toEqual([[0, 1], [0, 0]])
+    const piece = await page.context().newPage()
+    await visit(piece, `/pieces/${(await pieces('Panel'))[0]?.id}`)
+    await piece.getByText(/^What was left to do was cancelled .*: The order fell through\.$/).waitFor()
+    await piece.close()
     await told(page).getByRole('button', { name: 'Undo' }).tap()
-    await told(page).getByText(/^Taken back: batch cancelled\./).waitFor()
+    await told(page).getByText(/^Taken back: batch cancelled/).waitFor()
     expect((await pieces('Panel')).every(piece => piece.turns.length > 0)).toBe(true)
   })
 
@@ -213,8 +218,12 @@ describe('the list', () => {
     await page.getByText('1 of 5 pieces').waitFor()
     expect(await page.getByRole('searchbox', { name: 'Find' }).inputValue()).toBe('case 2')
     await page.getByRole('searchbox', { name: 'Find' }).fill('nothing of the kind')
-    await page.getByRole('button', { name: 'Show all' }).click()
+    await page.getByRole('button', { name: 'Show all' }).focus()
+    await page.keyboard.press('Enter')
     await page.getByText('5 pieces', { exact: true }).waitFor()
+    // The key is gone; the next Tab does not begin at the top of the whole page.
+    await page.keyboard.press('Tab')
+    expect(await page.getByRole('searchbox', { name: 'Find' }).evaluate(field => field === document.activeElement)).toBe(true)
   })
 
   it('offers a helper what helpers may tell, and no more', async () => {
