@@ -10,6 +10,7 @@ import { startServer } from '../helpers/server'
 import type { TestServer } from '../helpers/server'
 import { firstStudio, joinAs, testPassword } from '../helpers/sign-in'
 import type { Visitor } from '../helpers/sign-in'
+import { cautionDeferral, findCaution } from '#shared/library/cautions'
 import { qrMm, tagMm } from '#shared/tag-sheet'
 
 interface Tag { id: number, kind: string, code: string, name: string }
@@ -157,6 +158,39 @@ describe('a batch card', () => {
     const [label] = await pdf(page, `/print/pieces/${batch}?piece=1&paper=roll`)
     expect(label?.says).toMatch(/Bowl 1.*Bowls/)
     expect(label?.says).toContain('Rags burn')
+  }, 120_000)
+})
+
+describe('the cautions for the wall', () => {
+  it.each(['a4', 'letter'] as const)('hang on %s as a sheet for fire and one for breath and skin, with nothing cut off', async (paper) => {
+    await made('/api/rules', { text: 'Nobody sprays alone.' })
+    const { page } = await openPage(browser, server.origin, {}, helper)
+    const sheets = await pdf(page, `/print/cautions?paper=${paper}`)
+    for (const sheet of sheets) {
+      expect(Math.abs(sheet.width - sizes[paper][0])).toBeLessThan(0.3)
+      expect(Math.abs(sheet.height - sizes[paper][1])).toBeLessThan(0.3)
+      for (const { x, y } of sheet.texts) {
+        expect(x).toBeGreaterThan(9.7)
+        expect(y).toBeLessThan(sizes[paper][1] - 9.7)
+      }
+    }
+    expect(sheets.length).toBeLessThanOrEqual(4)
+    expect(sheets[0]?.says).toMatch(/^Fire.*Nobody sprays alone\./)
+    const all = sheets.map(sheet => sheet.says).join(' ')
+    const state = (await helper.get<{ cautions: { key: string }[] }>('/api/vapour')).body
+    const grave = state.cautions.flatMap(({ key }) => findCaution(key) ?? []).filter(caution => caution.topic !== 'work')
+    expect(grave.length).toBeGreaterThan(10)
+    for (const { text } of grave) expect(all).toContain(text)
+    expect(all.split(cautionDeferral)).toHaveLength(3)
+  }, 120_000)
+
+  it('are found from the page about air and fire', async () => {
+    const { page } = await openPage(browser, server.origin, {}, helper)
+    await visit(page, '/safety')
+    await page.getByRole('link', { name: 'Print the cautions for the wall' }).click()
+    await page.getByRole('heading', { name: 'Breath and skin' }).waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390)
   }, 120_000)
 })
 
