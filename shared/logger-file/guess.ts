@@ -85,9 +85,10 @@ const middle = (numbers: number[]) => numbers.sort((a, b) => a - b)[Math.floor(n
 const numbersOf = (column: Column | undefined, decimal: '.' | ',') => (column?.cells ?? []).map(cell => readNumber(cell, decimal)).filter(number => number !== null)
 
 function guessTempUnit(column: Column | undefined, decimal: '.' | ','): { unit: 'C' | 'F', proved: boolean } {
-  const marks = [column?.heading ?? '', column?.cells[0] ?? ''].join(' ')
-  if (/°\s*f\b|fahrenheit|[([_ ]f[)\]]?\s*$|\d\s*f\s*$/i.test(marks)) return { unit: 'F', proved: true }
-  if (/°\s*c\b|celsius|[([_ ]c[)\]]?\s*$|\d\s*c\s*$/i.test(marks)) return { unit: 'C', proved: true }
+  const marks = [column?.heading ?? '', column?.cells[0] ?? '']
+  const marked = (pattern: RegExp) => marks.some(mark => pattern.test(mark))
+  if (marked(/°\s*f\b|fahrenheit|[([_ ]f[)\]]?\s*$|\d\s*f\s*$/i)) return { unit: 'F', proved: true }
+  if (marked(/°\s*c\b|celsius|[([_ ]c[)\]]?\s*$|\d\s*c\s*$/i)) return { unit: 'C', proved: true }
   const usual = middle(numbersOf(column, decimal))
   return { unit: usual !== null && usual > warmestRoomC ? 'F' : 'C', proved: column === undefined }
 }

@@ -62,7 +62,7 @@ export const loggerWords = {
   found: (amount: number) => `${readingCount(amount)} can be brought in`,
   none: 'No line gives a reading.',
   span: (from: string, to: string) => `From ${from} to ${to}.`,
-  repeated: (amount: number) => `${lineCount(amount)} repeat an instant of the file and ${amount === 1 ? 'is' : 'are'} passed over.`,
+  repeated: (amount: number) => `${lineCount(amount)} ${amount === 1 ? 'repeats an instant of the file and is' : 'repeat instants of the file and are'} passed over.`,
   badTitle: (amount: number) => `${lineCount(amount)} cannot be read`,
   badMore: (amount: number) => `And ${lineCount(amount)} more.`,
   leaveOut: (amount: number) => amount === 1 ? 'Leave that line out' : `Leave those ${lineCount(amount)} out`,

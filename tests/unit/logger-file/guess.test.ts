@@ -79,6 +79,10 @@ describe('units', () => {
   it.each([['Temp (°F)', '66.2', 'F'], ['temp_c', '19', 'C'], ['Temperature', '66.2', 'F'], ['Temperature', '19.2', 'C']])('%s with %s is in %s', (heading, cell, unit) => {
     expect(figures(['time', heading, 'rh'], [cell, '50']).plan.tempUnit).toBe(unit)
   })
+  it.each([['Temp (F)', 'F'], ['temp_f', 'F'], ['temp C', 'C']])('%s is taken at its word on a cold day', (heading, unit) => {
+    const { plan, doubts } = figures(['time', heading, 'rh'], ['34', '50'])
+    expect([plan.tempUnit, doubts.includes('tempUnit')]).toEqual([unit, false])
+  })
   it('stand beside the figure too', () => expect(figures(['time', 'Temp', 'rh'], ['44 °F', '50']).plan.tempUnit).toBe('F'))
   it('of humidity are shares where no figure is over one', () => {
     expect(figures(['time', 'temp', 'rh'], ['19', '0.56']).plan.humidityUnit).toBe('share')
