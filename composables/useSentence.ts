@@ -25,6 +25,8 @@ function useCard(putOn: PutOn, mayPut: Ref<boolean>) {
   const left = ref<number[]>([])
   const chosenId = ref<number | null>(null)
   const when = ref<TimeAnswer | null>(null)
+  /** How many sentences were read: the keys of time begin anew with each. */
+  const count = ref(0)
   const choices = computed(() => (sentence.value ? choicesOf(sentence.value, vocabulary.value.rooms) : []))
   const reads = computed(() => {
     const ids = sentence.value && 'pieceIds' in sentence.value ? sentence.value.pieceIds : []
@@ -41,11 +43,12 @@ function useCard(putOn: PutOn, mayPut: Ref<boolean>) {
   function show(text: string) {
     sentence.value = readSentence(text, vocabulary.value, studio.clock.value, units.value)
     left.value = []
+    count.value += 1
     when.value = sentence.value?.when ?? null
     const said = sentence.value
     chosenId.value = said && (said.kind !== 'reading' || said.room) ? choices.value[0]?.id ?? null : null
   }
-  return { sentence, left, chosenId, when, choices, settled, reads, meant, says, wanted, show }
+  return { sentence, left, chosenId, when, count, choices, settled, reads, meant, says, wanted, show }
 }
 
 /** One sentence from the words to the card and to what is told. What is put on is told by `putOn`, as its own page tells it. */
@@ -69,7 +72,7 @@ export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>
     putOn.chosen.value = card.meant.value.map(piece => piece.id)
     putOn.on.wholeAgain()
     if (card.chosenId.value !== null) putOn.materialId.value = card.chosenId.value
-    if (card.when.value) putOn.when.value = card.when.value
+    putOn.when.value = card.when.value
   }
   function drop() {
     card.sentence.value = null

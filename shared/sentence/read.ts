@@ -5,8 +5,9 @@ import type { NamedPiece } from '#shared/sentence/pieces'
 import { tokensOf } from '#shared/sentence/tokens'
 import type { Token } from '#shared/sentence/tokens'
 import { takeWhen } from '#shared/sentence/when'
+import type { SaidWhen } from '#shared/sentence/when'
 import type { MilestoneName } from '#shared/terms'
-import type { Clock, TimeAnswer } from '#shared/time'
+import type { Clock } from '#shared/time'
 import { celsius } from '#shared/units'
 import type { Units } from '#shared/units'
 
@@ -20,7 +21,7 @@ export interface Vocabulary {
 
 const humidityWords = ['dry', 'normal', 'damp', 'wet'] as const
 export type HumidityWord = typeof humidityWords[number]
-interface Told { when: TimeAnswer, unknown: string[] }
+type Told = SaidWhen & { unknown: string[] }
 
 /** What a sentence says, as far as it was understood; null and empty for what it does not say. `unknown` are the words nobody understood. */
 export type Sentence
@@ -70,13 +71,13 @@ function takeFigure(tokens: Token[], units: readonly string[]): number | null {
   return number === null ? null : minus ? -number : number
 }
 
-function readAir(tokens: Token[], { rooms }: Vocabulary, units: Units, when: TimeAnswer): Sentence {
+function readAir(tokens: Token[], { rooms }: Vocabulary, units: Units, when: SaidWhen): Sentence {
   const room = takeName(tokens, rooms)
   const rh = takeFigure(tokens, ['percent'])
   const said = takeFigure(tokens, ['degree'])
   const scale = ['f', 'fahrenheit'].some(word => takePhrase(tokens, word)) ? 'us' : ['c', 'celsius'].some(word => takePhrase(tokens, word)) ? 'metric' : units
   const words = humidityWords.find(word => takePhrase(tokens, word)) ?? null
-  return { kind: 'reading', room, tempC: said === null ? null : scale === 'us' ? celsius(said) : said, rh: rh === null ? null : rh / 100, words: rh === null ? words : null, when, unknown: leftOver(tokens, filler) }
+  return { kind: 'reading', room, tempC: said === null ? null : scale === 'us' ? celsius(said) : said, rh: rh === null ? null : rh / 100, words: rh === null ? words : null, ...when, unknown: leftOver(tokens, filler) }
 }
 
 /** Everything that stands in a place that is named, where no piece is: "varnish on the long shelf". */
@@ -100,15 +101,15 @@ export function readSentence(text: string, vocabulary: Vocabulary, clock: Clock,
   const pieceIds = takePieces(tokens, vocabulary.pieces)
   if (said(carried)) {
     const place = takeName(tokens, vocabulary.places)
-    return { kind: 'moved', place, pieceIds, when, unknown: leftOver(tokens, filler) }
+    return { kind: 'moved', place, pieceIds, ...when, unknown: leftOver(tokens, filler) }
   }
   // "The shed is damp" is about the air; "the long shelf is dry" about what stands on it.
   const ofRoom = pieceIds.length === 0 && takeName([...tokens], vocabulary.places) === null && takeName([...tokens], vocabulary.rooms) !== null
   if (ofRoom && said(humidityWords)) return readAir(tokens, vocabulary, units, when)
   const test = takeTest(tokens)
-  if (test) return { kind: 'touch test', ...test, pieceIds: pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary), when, unknown: leftOver(tokens, filler) }
+  if (test) return { kind: 'touch test', ...test, pieceIds: pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary), ...when, unknown: leftOver(tokens, filler) }
   const material = takeName(tokens, vocabulary.materials)
   const standing = pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary)
   if (!material && standing.length === 0) return null
-  return { kind: 'put on', material, pieceIds: standing, when, unknown: leftOver(tokens, filler) }
+  return { kind: 'put on', material, pieceIds: standing, ...when, unknown: leftOver(tokens, filler) }
 }

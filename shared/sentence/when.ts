@@ -1,3 +1,4 @@
+import { takeDay, timeOn } from '#shared/sentence/day'
 import type { Token } from '#shared/sentence/tokens'
 import { addDays, fromLocal, localDate } from '#shared/time'
 import type { Clock, TimeAnswer } from '#shared/time'
@@ -27,36 +28,41 @@ function clockAt(tokens: readonly Token[], at: number): { minutes: number, lengt
   return { minutes: (late ? hour + 12 : hour) * 60, length: ['pm', 'am', 'o\'clock'].includes(tokens[at + 1]?.word ?? '') ? 2 : 1 }
 }
 
-/** A wall time that lies behind: today's, or yesterday's when today's is still to come or "yesterday" was said. */
-function lastTime(minutes: number, yesterday: boolean, { now, zone }: Clock): number {
+/** A wall time that lies behind: today's, or yesterday's when today's is still to come. */
+function lastTime(minutes: number, { now, zone }: Clock): number {
   const today = localDate(now, zone)
   const at = fromLocal(today, minutes, zone)
-  return yesterday || at > now ? fromLocal(addDays(today, -1), minutes, zone) : at
+  return at > now ? fromLocal(addDays(today, -1), minutes, zone) : at
 }
+
+/** When a sentence says it was. A day without an hour that lies behind is no time: last night's coat is not one of now, and its hour is for hands to give. `day` is that day, YYYY-MM-DD. */
+export type SaidWhen = { when: TimeAnswer, day: null } | { when: null, day: string }
+
+const timed = (when: TimeAnswer): SaidWhen => ({ when, day: null })
 
 /**
  * When a sentence says it was, and takes those words out of it; now when it says nothing.
  * @param tokens changed: what was understood is taken out
  */
-export function takeWhen(tokens: Token[], clock: Clock): TimeAnswer {
+export function takeWhen(tokens: Token[], clock: Clock): SaidWhen {
   const ago = tokens.findIndex(token => token.word === 'ago')
   const span = ago < 0 ? null : spanBefore(tokens, ago)
   if (span) {
     const begin = ['about', 'some', 'around'].includes(tokens[span.from - 1]?.word ?? '') ? span.from - 1 : span.from
     tokens.splice(begin, ago + 1 - begin)
-    return { kind: 'ago', minutes: Math.round(span.minutes) }
+    return timed({ kind: 'ago', minutes: Math.round(span.minutes) })
   }
+  const day = takeDay(tokens, clock)
   for (let at = 0; at < tokens.length; at += 1) {
     const found = clockAt(tokens, at)
     if (!found) continue
-    const day = tokens.findIndex(token => token.word === 'yesterday')
     const from = ['at', 'since'].includes(tokens[at - 1]?.word ?? '') ? at - 1 : at
     tokens.splice(from, at + found.length - from)
-    const left = tokens.findIndex(token => token.word === 'yesterday')
-    if (left >= 0) tokens.splice(left, 1)
-    return { kind: 'at', at: lastTime(found.minutes, day >= 0, clock) }
+    const said = day ? timeOn(day, found.minutes, clock) : lastTime(found.minutes, clock)
+    if (said !== null) return timed({ kind: 'at', at: said })
   }
+  if (day) return { when: null, day: day.date }
   const just = tokens.findIndex(token => token.word === 'now')
   if (just >= 0) tokens.splice(tokens[just - 1]?.word === 'just' ? just - 1 : just, tokens[just - 1]?.word === 'just' ? 2 : 1)
-  return { kind: 'ago', minutes: 0 }
+  return timed({ kind: 'ago', minutes: 0 })
 }

@@ -14,6 +14,7 @@ export const sentenceWords = {
   empty: 'Type or dictate a sentence first.',
   card: 'Is this meant?',
   unknown: (words: readonly string[]) => `Not understood: ${words.map(word => `“${word}”`).join(', ')}.`,
+  hour: 'A day is named and no hour that lies behind: give the time below.',
   which: { material: 'Which material', place: 'Which place', room: 'Which room' },
   note: 'Yes, note it',
   drop: 'No, leave it',

@@ -76,6 +76,24 @@ describe('one sentence', () => {
     // The last of the row is the twenty minutes old one; the others lie before it.
     expect(Math.abs(Math.max(...coats.map(coat => coat.ended_at)) - (Date.now() - 20 * 60_000))).toBeLessThan(90_000)
   })
+  it('of last night is not noted as one of now: its hour is asked for', async () => {
+    await open(maker, '/put-on')
+    const told = rows('select id from coat').length
+    await say('acrylic gesso on ledger 4 yesterday evening')
+    const card = page.getByRole('group', { name: 'Is this meant?' })
+    await card.getByText('A day is named and no hour that lies behind: give the time below.').waitFor()
+    const yesterday = await card.getByLabel('Day').inputValue()
+    await card.getByRole('button', { name: 'Yes, note it' }).click()
+    await page.getByText('Give the time it was done.').first().waitFor()
+    expect(rows('select id from coat')).toHaveLength(told)
+    await card.getByLabel('Time').fill('19:30')
+    await card.getByRole('button', { name: 'Yes, note it' }).click()
+    await page.getByRole('region', { name: 'Told' }).waitFor()
+    const [coat] = rows<{ ended_at: number }>('select ended_at from coat order by id desc')
+    const [{ zone }] = rows<{ zone: string }>('select zone from studio') as [{ zone: string }]
+    expect(new Date(coat!.ended_at).toLocaleString('sv-SE', { timeZone: zone })).toBe(`${yesterday} 19:30:00`)
+    expect(coat!.ended_at).toBeLessThan(Date.now())
+  })
   it('that nobody understands stays as it was typed', async () => {
     await open(maker, '/put-on')
     await say('what a fine morning')

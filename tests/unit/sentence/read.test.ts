@@ -25,7 +25,7 @@ const putOn = (text: string) => read(text) as PutOn
 describe('something put on', () => {
   it('is read with its pieces and its time', () => {
     expect(read('White gesso on ledgers one to four, twenty minutes ago')).toEqual({
-      kind: 'put on', material: { id: 1, name: 'White acrylic gesso', others: [] }, pieceIds: [1, 2, 3, 4], when: { kind: 'ago', minutes: 20 }, unknown: [],
+      kind: 'put on', material: { id: 1, name: 'White acrylic gesso', others: [] }, pieceIds: [1, 2, 3, 4], when: { kind: 'ago', minutes: 20 }, day: null, unknown: [],
     })
   })
   it('keeps what else a short name may have meant, the last used first', () => {
@@ -62,9 +62,17 @@ describe('when', () => {
     expect(when(text)).toMatchObject({ when: { kind: 'ago', minutes }, unknown: [], pieceIds: [1] })
   })
   // London is an hour ahead of UTC in June.
-  it.each<[string, number]>([['at 14:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 2 pm', Date.UTC(2026, 5, 10, 13)], ['at 9 o\'clock', Date.UTC(2026, 5, 10, 8)], ['at 17:40', Date.UTC(2026, 5, 9, 16, 40)], ['yesterday at 9:30', Date.UTC(2026, 5, 9, 8, 30)]])('"%s"', (text, at) => {
+  it.each<[string, number]>([['at 14:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 2 pm', Date.UTC(2026, 5, 10, 13)], ['at 9 o\'clock', Date.UTC(2026, 5, 10, 8)], ['at 17:40', Date.UTC(2026, 5, 9, 16, 40)], ['yesterday at 9:30', Date.UTC(2026, 5, 9, 8, 30)], ['at 9:30 yesterday', Date.UTC(2026, 5, 9, 8, 30)],
+    ['yesterday evening at 7', Date.UTC(2026, 5, 9, 18)], ['at 11 last night', Date.UTC(2026, 5, 9, 22)], ['last night at 2', Date.UTC(2026, 5, 10, 1)], ['this morning at 8:15', Date.UTC(2026, 5, 10, 7, 15)],
+    // The tenth of June 2026 is a Wednesday.
+    ['on Monday at 9', Date.UTC(2026, 5, 8, 8)], ['on Monday afternoon at 3', Date.UTC(2026, 5, 8, 14)], ['last Wednesday at 9', Date.UTC(2026, 5, 3, 8)]])('"%s"', (text, at) => {
     expect(when(text)).toMatchObject({ when: { kind: 'at', at }, unknown: [] })
   })
+  // A coat of last night told as one of now would be ready a night late, and its window shut.
+  it.each([['yesterday', '2026-06-09'], ['yesterday evening', '2026-06-09'], ['last night', '2026-06-09'], ['this morning', '2026-06-10'], ['on Monday', '2026-06-08'], ['last Friday evening', '2026-06-05'], ['today', '2026-06-10'], ['this evening at 11', '2026-06-10']])('asks for the hour of "%s"', (text, day) => {
+    expect(when(text)).toMatchObject({ when: null, day, unknown: [], pieceIds: [1] })
+  })
+  it('leaves a part of the day in a name', () => expect(when('evening').when).toEqual({ kind: 'ago', minutes: 0 }))
 })
 
 describe('a touch test', () => {

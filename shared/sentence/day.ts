@@ -1,0 +1,47 @@
+import type { Token } from '#shared/sentence/tokens'
+import { addDays, fromLocal, localDate, weekdayOf } from '#shared/time'
+import type { Clock } from '#shared/time'
+
+type PartOfDay = 'morning' | 'afternoon' | 'evening' | 'night'
+/** A day that a sentence names, and the part of it; null for what it leaves open. */
+export interface SaidDay { date: string, part: PartOfDay | null }
+
+const parts: readonly string[] = ['morning', 'afternoon', 'evening', 'night'] satisfies PartOfDay[]
+const isPart = (word: string | undefined): word is PartOfDay => word !== undefined && parts.includes(word)
+const weekdays = ['monday', 'tuesday', 'wednesday', 'thursday', 'friday', 'saturday', 'sunday']
+
+/** Days back to a weekday (0 is Monday) that is over or today: a week where today has its name and it is said to be the last. */
+function daysBack(weekday: number, today: string, last: boolean): number {
+  const back = (weekdayOf(today) - 1 - weekday + 7) % 7
+  return back === 0 && last ? 7 : back
+}
+
+/**
+ * "yesterday", "last night", "this morning", "on Monday evening": the day it was, taken out of the sentence; null where none is named.
+ * A part of the day alone may be in a name ("Evening box"), so it counts only behind a word that points at a day.
+ * @param tokens changed: what was understood is taken out
+ */
+export function takeDay(tokens: Token[], { now, zone }: Clock): SaidDay | null {
+  const today = localDate(now, zone)
+  for (let at = 0; at < tokens.length; at += 1) {
+    // As it was said: "this" as one of a thing is no word.
+    const [word, next] = [tokens[at]!.said, tokens[at + 1]?.word]
+    const weekday = weekdays.indexOf(['on', 'last', 'since'].includes(word) ? next ?? '' : word)
+    const points = word === 'yesterday' || word === 'today' || weekday >= 0 || (['this', 'last'].includes(word) && isPart(next))
+    if (!points) continue
+    const first = weekday >= 0 && !weekdays.includes(word) ? at + 2 : at + 1
+    const part = tokens[first]?.word
+    tokens.splice(at, first + (isPart(part) ? 1 : 0) - at)
+    const back = weekday >= 0 ? daysBack(weekday, today, word === 'last') : word === 'yesterday' || word === 'last' ? 1 : 0
+    return { date: addDays(today, -back), part: isPart(part) ? part : null }
+  }
+  return null
+}
+
+/** A wall time on a day that was named, ms UTC: "at 7" in the evening is 19:00, "at 2" in the night is of the morning after. Null when it is still to come. */
+export function timeOn({ date, part }: SaidDay, minutes: number, { now, zone }: Clock): number | null {
+  const morningAfter = part === 'night' && minutes < 6 * 60
+  const later = !morningAfter && part !== null && part !== 'morning' && minutes < 12 * 60
+  const at = fromLocal(morningAfter ? addDays(date, 1) : date, minutes + (later ? 12 * 60 : 0), zone)
+  return at <= now ? at : null
+}
