@@ -24,7 +24,7 @@ interface Division { bench: number, coat: number }
 /** An even bench that the sheet misjudges. */
 const even: Division = { bench: Math.sqrt(0.985), coat: Math.sqrt(0.015) }
 /** A bench on its sheet, or nearly, whose coats scatter as the sheet says. Like the even one it adds up to the sheet's own band, so that only evidence over several coats chooses. */
-const scattered: Division = { bench: Math.sqrt(0.05), coat: Math.sqrt(0.95) }
+const scattered: Division = { bench: Math.sqrt(0.15), coat: Math.sqrt(0.85) }
 /** A bench that the sheet misjudges and whose coats scatter besides: no time is told by it, but what is even must be likelier than this too. */
 const offAndScattered: Division = { bench: even.bench, coat: scattered.coat }
 
@@ -93,7 +93,7 @@ function coatEvidence(tests: readonly BenchTest[], scales: readonly (SheetScale 
 }
 
 /** How far the evidence for evenness must lead, in ln, before it counts as much as the sheet. */
-const leadWanted = 0.25
+const leadWanted = 0.45
 /** How sharply it is chosen about there. */
 const steepness = 4
 /** Of the evidence for scatter, the part that takes the sheet's middle for the bench's own. */
