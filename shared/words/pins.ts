@@ -8,7 +8,7 @@ export const pinWords = {
   begun: 'It has been begun: work in hand stays where it is.',
   notPlanned: 'It has no time in the plan, so there is nothing to pin.',
   notAble: (name: string, step: string) => `${name} does not do ${titled(step)}: choose somebody who may.`,
-  hours: (name: string | null, step: string) => name === null ? `Nobody who may do ${titled(step)} works for so long then.` : `${name} does not work for so long then.`,
+  hours: (name: string | null, step: string) => name === null ? `Nobody who may do ${titled(step)} is at work then for as long as it takes.` : `${name} is not at work then for as long as it takes.`,
   filmFirst: (step: string, readyAt: number, clock: Clock) => `${titled(step)} cannot begin before ${roughTime(readyAt, clock, 'up')}: what is beneath is not dry enough sooner.`,
   stepFirst: (step: string, before: string, readyAt: number, clock: Clock) => `${titled(step)} cannot begin before ${roughTime(readyAt, clock, 'up')}: ${titled(before)} comes first.`,
   shutRoom: (room: string) => `${room} stands shut until a person opens it, so nobody is planned into it.`,

@@ -53,10 +53,10 @@ export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${as
 export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${localDate(fromAt, clock.zone) === localDate(toAt, clock.zone) ? clockFace(clock.zone.wall(toAt).minutes) : clockTime(toAt, clock)}`
 
 /** What is known of a block beside its time, one sentence each. */
-export function blockNotes(block: PlanBlock, clock: Clock): string[] {
+export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'lastStartAt'>, clock: Clock): string[] {
   return [
     block.readyAt === null || block.readyAt <= clock.now ? 'What it waits for is ready.' : `Ready from ${roughTime(block.readyAt, clock, 'up')}.`,
-    ...block.lastStartAt === null ? [] : [`Last moment to start: ${clockTime(block.lastStartAt, clock)}.`],
+    ...block.lastStartAt === null ? [] : [`${block.lastStartAt < clock.now ? 'The last moment to start has gone by' : 'Last moment to start'}: ${clockTime(block.lastStartAt, clock)}.`],
   ]
 }
 

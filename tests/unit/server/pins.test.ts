@@ -47,7 +47,7 @@ describe('pinning', () => {
     const [lid] = turnsOf(studio, 'lid-1')
     const [turnLid] = turnsOf(studio, 'turn-lid')
     expect(await pinAt(studio, [lid ?? 0], now - hour)).toMatchObject({ ok: false, reason: 'impossible', message: 'That time has gone by. The next that can be given is 10:00.' })
-    expect(await pinAt(studio, [lid ?? 0], Date.parse('2026-04-07T20:00:00Z'))).toMatchObject({ message: 'Nobody who may do “First paint on the lid top” works for so long then.' })
+    expect(await pinAt(studio, [lid ?? 0], Date.parse('2026-04-07T20:00:00Z'))).toMatchObject({ message: 'Nobody who may do “First paint on the lid top” is at work then for as long as it takes.' })
     // The first paint ends at the soonest at 10:06 and then dries: eleven is too soon to turn the lid.
     expect(await pinAt(studio, [turnLid ?? 0], now + hour)).toMatchObject({ message: expect.stringMatching(/^“Turn the lid over onto points” cannot begin before .*: “First paint on the lid top” comes first\.$/) })
     expect(studio.db.select().from(pin).all()).toEqual([])
@@ -79,7 +79,7 @@ describe('pinning', () => {
     const lids = turnsOf(studio, 'lid-1')
     const at = Date.parse('2026-04-08T11:00:00Z')
     // Wednesday opens at 8:30: at 8:40 there is no time to set up.
-    expect(await pinAt(studio, lids, Date.parse('2026-04-08T08:40:00Z'))).toMatchObject({ message: expect.stringContaining('works for so long then') })
+    expect(await pinAt(studio, lids, Date.parse('2026-04-08T08:40:00Z'))).toMatchObject({ message: expect.stringContaining('is at work then for as long as it takes') })
     expect(await pinAt(studio, lids, at, studio.members.maker.id)).toEqual({ ok: true })
     expect(await replan(db, studio.studioId, now, atOnce)).toMatchObject({ ok: true })
     // Two lids of six minutes from 11:00, set up from 10:40, cleaned up till 11:27: the maker has nothing else then.

@@ -4,7 +4,7 @@ import { temperatureText } from '#shared/units'
 import { takenText } from '#shared/words/board'
 import { toldWords } from '#shared/words/hands'
 import { goneText } from '#shared/words/piece'
-import { blockTime } from '#shared/words/plan-strips'
+import { blockNotes, blockTime } from '#shared/words/plan-strips'
 import { putOnKey } from '#shared/words/put-on'
 import { problemText } from '#shared/words/schedule-problems'
 import { waitText } from '#shared/words/schedules'
@@ -28,6 +28,10 @@ describe('small sentences', () => {
   it('give the end of work its day when that is another', () => {
     expect(blockTime({ fromAt: at('2026-04-08T09:15'), toAt: at('2026-04-08T10:40') }, clock)).toBe('Wed 9:15 to 10:40')
     expect(blockTime({ fromAt: at('2026-04-07T22:00'), toAt: at('2026-04-08T00:30') }, clock)).toBe('22:00 to Wed 0:30')
+  })
+  it('say of a last moment whether it has gone by', () => {
+    const last = (lastStartAt: number) => blockNotes({ readyAt: null, lastStartAt }, clock)[1]
+    expect([last(at('2026-04-07T09:15')), last(at('2026-04-07T10:30'))]).toEqual(['The last moment to start has gone by: 9:15.', 'Last moment to start: 10:30.'])
   })
   it('have a true minus below nought', () => {
     expect(temperatureText(-3.25, 'metric')).toBe('−3.3 °C')
