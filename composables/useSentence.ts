@@ -51,6 +51,32 @@ function useCard(putOn: PutOn, mayPut: Ref<boolean>) {
   return { sentence, left, chosenId, when, count, choices, settled, reads, meant, says, wanted, show }
 }
 
+const formOf = ({ chosen, materialId, when }: PutOn) => [chosen, materialId, when] as const
+
+/** The form below says what the card says, so that what was not understood is chosen there. Nothing of a sentence that was not meant stays in it. */
+function useFilling(putOn: PutOn, card: ReturnType<typeof useCard>) {
+  const fields = formOf(putOn)
+  const said = () => fields.map(field => JSON.stringify(field.value))
+  let before: unknown[] | null = null
+  let filled: string[] = []
+
+  function fill() {
+    before ??= fields.map(field => field.value)
+    putOn.chosen.value = card.meant.value.map(piece => piece.id)
+    putOn.on.wholeAgain()
+    if (card.chosenId.value !== null) putOn.materialId.value = card.chosenId.value
+    putOn.when.value = card.when.value
+    filled = said()
+  }
+  /** What the form held before; what hands have chosen in it since is theirs. */
+  function empty() {
+    const now = said()
+    fields.forEach((field, i) => { if (before && now[i] === filled[i]) (field as Ref<unknown>).value = before[i] })
+    before = null
+  }
+  return { fill, empty, keep: () => { before = null } }
+}
+
 /** One sentence from the words to the card and to what is told. What is put on is told by `putOn`, as its own page tells it. */
 export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>['say'], mayPut: Ref<boolean>) {
   const { studio } = putOn
@@ -59,22 +85,17 @@ export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>
   const result = ref<string | null>(null)
   const { busy, message, submit } = useSubmit()
   const card = useCard(putOn, mayPut)
+  const form = useFilling(putOn, card)
 
   function read() {
+    form.empty()
     result.value = null
-    const empty = text.value.trim() === ''
     card.show(text.value)
-    problem.value = empty ? sentenceWords.empty : card.sentence.value ? null : sentenceWords.nothing
-    if (card.sentence.value?.kind === 'put on' && mayPut.value) fill()
-  }
-  /** The form below says the same, so that what was not understood is chosen there. */
-  function fill() {
-    putOn.chosen.value = card.meant.value.map(piece => piece.id)
-    putOn.on.wholeAgain()
-    if (card.chosenId.value !== null) putOn.materialId.value = card.chosenId.value
-    putOn.when.value = card.when.value
+    problem.value = text.value.trim() === '' ? sentenceWords.empty : card.sentence.value ? null : sentenceWords.nothing
+    if (card.sentence.value?.kind === 'put on' && mayPut.value) form.fill()
   }
   function drop() {
+    form.empty()
     card.sentence.value = null
     problem.value = null
   }
@@ -89,7 +110,8 @@ export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>
     if (said.kind === 'touch test') await say({ kind: 'touch test', body: { milestone: said.milestone, reached: said.reached }, pieces, doneAt })
     else if (said.kind === 'moved') await say({ kind: 'moved', body: { placeId: said.place?.id }, pieces, doneAt })
     else {
-      fill()
+      form.fill()
+      form.keep()
       await putOn.done(putOn.parts.value.some(part => part.step !== null))
     }
     return true
