@@ -1,6 +1,8 @@
 // npm start: gives the built server what it cannot run without, then becomes it. README lists the variables.
 import { randomBytes } from 'node:crypto'
+import { once } from 'node:events'
 import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs'
+import { createServer } from 'node:net'
 import { join } from 'node:path'
 
 function stop(sentence) {
@@ -17,6 +19,29 @@ function readPem(name) {
   catch {
     return stop(`${name} names ${file}, which cannot be read.`)
   }
+}
+
+/** Takes the address and gives it back: what the server's own listening would fail at with a stack trace is said here in one sentence. */
+async function holdAddress(host, port) {
+  const probe = createServer()
+  probe.listen(port, host)
+  try {
+    await once(probe, 'listening')
+  }
+  catch (error) {
+    stop(listenFailures[error.code]?.(host, port) ?? `${host} and port ${port} cannot be listened on: ${error.code}.`)
+  }
+  probe.close()
+  await once(probe, 'close')
+}
+
+const noAddress = host => `STILLWET_HOST must be an address of this machine, such as 127.0.0.1 or 0.0.0.0, not "${host}".`
+const listenFailures = {
+  ENOTFOUND: noAddress,
+  EAI_AGAIN: noAddress,
+  EADDRNOTAVAIL: noAddress,
+  EADDRINUSE: (host, port) => `Port ${port} is taken already: stop what listens there, or give another with STILLWET_PORT.`,
+  EACCES: (host, port) => `Port ${port} is not open to this user: give one above 1023 with STILLWET_PORT.`,
 }
 
 /** Outside production a secret is made once and kept beside the data, readable by its owner alone. */
@@ -43,6 +68,8 @@ const secure = certificate !== null || (process.env.STILLWET_PUBLIC_URL ?? '').s
 process.env.NUXT_SESSION_COOKIE_SECURE = String(secure)
 process.env.HOST = process.env.STILLWET_HOST || '127.0.0.1'
 process.env.PORT = process.env.STILLWET_PORT || process.env.PORT || '3000'
+if (!/^\d+$/.test(process.env.PORT) || Number(process.env.PORT) > 65535) stop(`STILLWET_PORT must be a whole number from 0 to 65535, not "${process.env.PORT}".`)
+await holdAddress(process.env.HOST, Number(process.env.PORT))
 process.env.NITRO_SHUTDOWN_TIMEOUT ??= '3000'
 
 await import('../.output/server/index.mjs')

@@ -53,9 +53,9 @@ type Environment = Record<string, string | undefined>
 export class ConfigError extends Error {}
 
 const given = (env: Environment, name: string) => env[name]?.trim() || null
-const isOn = (env: Environment, name: string) => {
-  const value = given(env, name)
-  if (value === null || value === '0') return false
+const isOn = (env: Environment, name: string, usual: '1' | '0' = '0') => {
+  const value = given(env, name) ?? usual
+  if (value === '0') return false
   if (value === '1') return true
   throw new ConfigError(`${name} must be 1 or 0, not "${value}".`)
 }
@@ -75,13 +75,14 @@ function readAddress(env: Environment, name: string) {
 }
 
 function readSmtp(env: Environment): SmtpConfig | null {
-  const host = given(env, 'STILLWET_SMTP_HOST')
-  if (host === null) return null
   const port = Number(given(env, 'STILLWET_SMTP_PORT') ?? 587)
   if (!Number.isInteger(port) || port < 1 || port > 65535) throw new ConfigError('STILLWET_SMTP_PORT must be a whole number from 1 to 65535.')
+  const secure = isOn(env, 'STILLWET_SMTP_SECURE')
+  const host = given(env, 'STILLWET_SMTP_HOST')
+  if (host === null) return null
   const from = given(env, 'STILLWET_MAIL_FROM')
   if (from === null) throw new ConfigError('STILLWET_MAIL_FROM is missing: a mail server is set, so mail needs a sender.')
-  return { host, port, secure: isOn(env, 'STILLWET_SMTP_SECURE'), user: given(env, 'STILLWET_SMTP_USER'), password: env.STILLWET_SMTP_PASSWORD ?? '', from }
+  return { host, port, secure, user: given(env, 'STILLWET_SMTP_USER'), password: env.STILLWET_SMTP_PASSWORD ?? '', from }
 }
 
 function readPushSubject(env: Environment) {
@@ -105,11 +106,12 @@ function readPushKeys(env: Environment) {
 export function readConfig(env: Environment): Config {
   const dataFolder = given(env, 'STILLWET_DATA') ?? '.data'
   const production = isOn(env, 'STILLWET_PRODUCTION')
+  const demo = isOn(env, 'STILLWET_DEMO', '1')
   const allowLoopbackPush = isOn(env, 'STILLWET_ALLOW_LOOPBACK_PUSH')
   if (production && allowLoopbackPush) throw new ConfigError('STILLWET_ALLOW_LOOPBACK_PUSH is for tests and must be off in production.')
   return {
     production,
-    demo: !production && given(env, 'STILLWET_DEMO') !== '0',
+    demo: demo && !production,
     dataFolder,
     databaseFile: given(env, 'STILLWET_DATABASE') ?? join(dataFolder, 'stillwet.db'),
     backupFolder: given(env, 'STILLWET_BACKUPS') ?? join(dataFolder, 'backups'),

@@ -1,5 +1,8 @@
 import { spawnSync } from 'node:child_process'
+import { once } from 'node:events'
 import { existsSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs'
+import { createServer } from 'node:net'
+import type { AddressInfo } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import Sqlite from 'better-sqlite3'
@@ -78,6 +81,31 @@ describe('a start that cannot be', () => {
   })
   it('says which setting is missing', () => {
     expect(failToStart({ STILLWET_SESSION_SECRET: '', NUXT_SESSION_PASSWORD: '' })).toEqual({ code: 2, said: 'Stillwet cannot start. STILLWET_SESSION_SECRET is missing: give at least 32 random characters.\n' })
+  })
+})
+
+describe('an address that cannot be listened on', () => {
+  /** Starts as `npm start` does, and says how it ended. */
+  const start = (settings: Record<string, string>) => {
+    const folder = newFolder()
+    const { status, stderr } = spawnSync(process.execPath, [join(process.cwd(), 'scripts/start.mjs')], { cwd: folder, encoding: 'utf8', timeout: 15_000, env: { PATH: process.env.PATH, STILLWET_DATA: folder, STILLWET_DEMO: '0', ...settings } })
+    return { code: status, said: stderr }
+  }
+  const refused = (sentence: string) => ({ code: 2, said: `Stillwet cannot start. ${sentence}\n` })
+
+  it.each(['abc', '99999', '-1', '80.5'])('is refused in one sentence for port %s', (port) => {
+    expect(start({ STILLWET_PORT: port })).toEqual(refused(`STILLWET_PORT must be a whole number from 0 to 65535, not "${port}".`))
+  })
+  // 192.0.2.0/24 is kept for documentation (RFC 5737): no machine has it.
+  it('is refused when it is not of this machine', () => {
+    expect(start({ STILLWET_HOST: '192.0.2.1', STILLWET_PORT: '0' })).toEqual(refused('STILLWET_HOST must be an address of this machine, such as 127.0.0.1 or 0.0.0.0, not "192.0.2.1".'))
+  })
+  it('is refused when somebody listens there', async () => {
+    const other = createServer().listen(0, '127.0.0.1')
+    await once(other, 'listening')
+    const { port } = other.address() as AddressInfo
+    expect(start({ STILLWET_PORT: `${port}` })).toEqual(refused(`Port ${port} is taken already: stop what listens there, or give another with STILLWET_PORT.`))
+    other.close()
   })
 })
 

@@ -24,7 +24,7 @@ describe('readConfig', () => {
     expect(() => read({ STILLWET_ALLOW_LOOPBACK_PUSH: '1', STILLWET_PRODUCTION: '1' })).toThrow('must be off in production')
   })
   it('takes a switch as 1 or 0 only', () => {
-    expect(() => read({ STILLWET_PRODUCTION: 'yes' })).toThrow('STILLWET_PRODUCTION must be 1 or 0, not "yes".')
+    for (const name of ['STILLWET_PRODUCTION', 'STILLWET_DEMO', 'STILLWET_SMTP_SECURE', 'STILLWET_ALLOW_LOOPBACK_PUSH']) expect(() => read({ [name]: 'no' })).toThrow(`${name} must be 1 or 0, not "no".`)
   })
   it('reads a mail server whole or not at all', () => {
     expect(read().smtp).toBeNull()
