@@ -1,6 +1,17 @@
 import type { FilmState, PieceState } from '#shared/schemas/piece-state'
 import { filmFacts } from '#shared/verdict/facts'
 
+/** Later than this after its start, work that began is told as what was done, ms (planning value). */
+const beganLateMs = 15 * 60_000
+
+/** So long a start of solvent work is told of, where no opening of the room ends it sooner, ms (planning value). */
+export const startToldForMs = 2 * 60 * 60_000
+
+/** Whether solvent work is told of when it lies behind: a coat that is on, or a beginning some time ago. It is a fact by then, and kept whatever is answered. Times in ms UTC. */
+export function liesBehind({ kind, doneAt }: { kind: string, doneAt: number }, now: number): boolean {
+  return kind !== 'began' || now - doneAt > beganLateMs
+}
+
 /** Whether a film still gives off solvent to speak of: until it is dry to handle at 98 %, and for as long as nobody can say when that is. */
 export function isWetSolvent(film: FilmState, now: number): boolean {
   if (!film.solventBorne) return false

@@ -8,7 +8,7 @@ import { room } from './places'
 import { member, studioColumn } from './studio'
 import { act } from './acts'
 
-/** Somebody begins solvent work in a room, with the three answers given before. Everybody is told. `actId` is the act that began it. */
+/** Somebody begins solvent work in a room, with the three answers given before, or was done, with what is said of it. Everybody is told. `actId` is the act that began it. */
 export const vapourStart = sqliteTable('vapour_start', {
   id: id(),
   studioId: studioColumn(),
@@ -23,7 +23,6 @@ export const vapourStart = sqliteTable('vapour_start', {
 }, t => [
   studioKey(t), within(t, t.roomId, room), within(t, t.actId, act), within(t, t.memberId, member),
   oneOf('vapour_start_exhaust', t.exhaust, exhaustAnswers), index('vapour_start_of_room').on(t.studioId, t.roomId, t.at),
-  check('vapour_start_answers', sql`${t.flamesOff} = 1 and ${t.nobodyElse} = 1`),
 ])
 
 /** The limits of a material's own data sheet, as the owner read them: they win over the library's. */

@@ -4,13 +4,11 @@ import { memberNames } from '~~/server/services/member-names'
 import { notClearBefore, readVapour } from '~~/server/services/vapour-rooms'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { startToldForMs } from '#shared/solvent-rooms'
 import type { ExhaustAnswer } from '#shared/terms'
 import { callWords } from '#shared/words/calls'
 import type { CallState } from './state'
 import type { WantedReminder } from './types'
-
-/** So long a start is told of, where no opening of the room ends it sooner, ms (planning value). */
-const toldForMs = 2 * 60 * 60_000
 
 export interface VapourStartCall { startId: number, roomName: string, at: number, by: string | null, exhaust: ExhaustAnswer }
 export interface ShutRoomCall { keepOutId: number, roomName: string, opensBy: string, clearAt: number }
@@ -19,7 +17,7 @@ export interface ShutRoomCall { keepOutId: number, roomName: string, opensBy: st
 export function readStarts(db: Database, studioId: number, now: number): VapourStartCall[] {
   const opened = sql`exists (select 1 from keep_out where keep_out.room_id = ${vapourStart.roomId} and keep_out.opened_at >= ${vapourStart.at})`
   const rows = db.select({ startId: vapourStart.id, roomName: room.name, at: vapourStart.at, memberId: vapourStart.memberId, exhaust: vapourStart.exhaust }).from(vapourStart).innerJoin(room, eq(room.id, vapourStart.roomId))
-    .where(and(scoped(vapourStart, studioId), gt(vapourStart.at, now - toldForMs), sql`not ${opened}`)).all()
+    .where(and(scoped(vapourStart, studioId), gt(vapourStart.at, now - startToldForMs), sql`not ${opened}`)).all()
   const names = rows.length > 0 ? memberNames(db, studioId) : new Map<number, string>()
   return rows.map(({ memberId, ...row }) => ({ ...row, by: names.get(memberId ?? 0) ?? null }))
 }

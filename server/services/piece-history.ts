@@ -1,5 +1,5 @@
 import { asc, eq, inArray, or } from 'drizzle-orm'
-import { act, actSubject, part, touchTest } from '~~/db/schema'
+import { act, actSubject, part, touchTest, vapourStart } from '~~/db/schema'
 import { correctionReach } from '~~/server/services/acts'
 import { facesOfPieces } from '~~/server/services/faces'
 import { memberNames } from '~~/server/services/member-names'
@@ -29,7 +29,9 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
   const sides = facesOfPieces(db, studioId, [folded.piece.id])
   const told = actDetails(db, studioId, folded, chains.flat())
   const details = (row: ActRow) => ({ ...told(row), on: toldOn(folded, row, subjects.filter(each => each.actId === row.id).map(each => each.partId), sides) })
-  const forecasts = readForecasts(db, studioId, chains.map(chain => rootOf(chain[0])))
+  const roots = chains.map(chain => rootOf(chain[0]))
+  const forecasts = readForecasts(db, studioId, roots)
+  const answers = readAnswers(db, studioId, roots)
   const problems = new Map(folded.folded.problems.map(each => [each.actId, each.why]))
   return chains.flatMap((chain): ActLine[] => {
     const [first] = chain
@@ -47,7 +49,7 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
       inForce, takenBack: last.voided, problem: inForce ? problems.get(first.id) ?? null : null,
       // Taking back repeats the act it takes back, so that one is not a second reading of it.
       was: chain.slice(0, last.voided ? -2 : -1).map(row => ({ doneAt: here(row).length > 0 ? doneAt(row) : row.doneAt, toldAt: row.toldAt, by: nameOf(row), here: here(row).length > 0, detail: details(row) })),
-      forecast: forecasts.get(first.id) ?? null,
+      forecast: forecasts.get(first.id) ?? null, answered: answers.get(first.id) ?? null,
       mayCorrect: inForce && last.kind in actBodies && last.doneAt >= now - correctionReach && (may(reader.role, 'correct acts of others') || last.memberId === reader.id),
     }]
   }).sort((a, b) => b.doneAt - a.doneAt || b.rootId - a.rootId)
@@ -82,4 +84,10 @@ function readSubjects(db: Database, studioId: number, actIds: number[]): Subject
 function readForecasts(db: Database, studioId: number, rootIds: number[]): Map<number, NonNullable<ActLine['forecast']>> {
   const rows = db.select({ actId: touchTest.actId, forecast: touchTest.forecast }).from(touchTest).where(scoped(touchTest, studioId, inArray(touchTest.actId, rootIds))).all()
   return new Map(rows.flatMap(({ actId, forecast }) => (forecast === null ? [] : [[actId, { likelyAt: forecast.likelyAt, p90At: forecast.p90At }] as const])))
+}
+
+/** What was answered when solvent work was told of, by the act that first told of it. In several rooms the answers are the same. */
+function readAnswers(db: Database, studioId: number, rootIds: number[]): Map<number, NonNullable<ActLine['answered']>> {
+  const rows = db.select({ actId: vapourStart.actId, exhaust: vapourStart.exhaust, flamesOff: vapourStart.flamesOff, nobodyElse: vapourStart.nobodyElse }).from(vapourStart).where(scoped(vapourStart, studioId, inArray(vapourStart.actId, rootIds))).all()
+  return new Map(rows.map(({ actId, ...answered }) => [actId, answered] as const))
 }

@@ -12,6 +12,7 @@ import { roomOfPlace, roomsOfParts } from '~~/server/work/rooms-of-parts'
 import type { RoomRow } from '~~/server/work/rooms-of-parts'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { VapourAsked } from '#shared/schemas/vapour'
+import { liesBehind } from '#shared/solvent-rooms'
 import { isSolventBorne } from '#shared/vapour/facts'
 import { benchRefusals } from '#shared/words/bench-refusals'
 import { listText } from '#shared/words/group'
@@ -54,9 +55,9 @@ function roomsOf(tx: Transaction, studioId: number, request: ActRequest, body: R
   return [...new Map(rows.map(row => [row.id, row])).values()]
 }
 
-/** Whether the answers given before still stand for a room: the same session with an exhaust that runs or no room to fill; without either only for the coat they were given for. */
+/** Whether the answers given before still stand for a room: the same session with an exhaust that runs or no room to fill; without either only for the coat they were given for, and with flames on or others inside for no other work at all. */
 function covers(start: StartRow | undefined, room: RoomRow, kind: TellableKind, now: number): boolean {
-  return start !== undefined && now - start.at < sessionMs && (start.exhaust === 'running' || room.outdoor || kind !== 'began')
+  return start !== undefined && start.flamesOff && start.nobodyElse && now - start.at < sessionMs && (start.exhaust === 'running' || room.outdoor || kind !== 'began')
 }
 
 /** What is asked of solvent work: where, and what is still to be answered. Null when the act is none. */
@@ -67,8 +68,8 @@ function solventWork(tx: Transaction, studioId: number, request: ActRequest, bod
 }
 
 /**
- * Refuses solvent work where somebody sleeps, in a room that is shut for whoever asks, and without the three answers; and isocyanate without the
- * owner's statement. Nobody's role and no setting lets it through.
+ * Refuses solvent work where somebody sleeps, in a room that is shut for whoever asks, and without the three answers; work about to begin also where
+ * one of them says no; and isocyanate without the owner's statement. Nobody's role and no setting lets it through.
  */
 export function refuseVapour(tx: Transaction, studioId: number, memberId: number | null, request: ActRequest, body: Record<string, unknown>, now: number): Refusal | null {
   const work = solventWork(tx, studioId, request, body)
@@ -87,10 +88,13 @@ export function refuseVapour(tx: Transaction, studioId: number, memberId: number
   if (asked.length === 0) return null
   // Whoever begins opens the room again: a bench tablet without a name cannot.
   if (memberId === null) return conflict(benchRefusals.solventWantsPerson, { ask: 'person' })
-  if (!request.vapour) return conflict(startVapour.ask(listText(asked.map(each => each.name))), {
+  const behind = liesBehind({ kind: request.kind, doneAt: Date.parse(request.doneAt) }, now)
+  if (!request.vapour) return conflict((behind ? startVapour.done : startVapour).ask(listText(asked.map(each => each.name))), {
     ask: 'vapour', rooms: asked.map(({ id, name, outdoor, sprayArea }) => ({ id, name, outdoor, sprayArea })),
     cautions: cautionsOf([...asked.some(each => each.sprayArea) ? [{ name: '', cautions: ['phones'] }] : [], ...work.materials.map(each => ({ name: each.name ?? '', cautions: each.cautions }))]), rules: rulesOf(tx, studioId),
   } satisfies VapourAsked)
+  // What lies behind is a fact: it is recorded with what was answered. Only what is about to begin can still be held back.
+  if (behind) return null
   if (!request.vapour.flamesOff) return impossible(startVapour.flamesOn)
   return request.vapour.nobodyElse ? null : impossible(startVapour.somebodyThere)
 }
@@ -127,7 +131,7 @@ function findShut(tx: Transaction, studioId: number, memberId: number | null, ro
   return null
 }
 
-/** Writes down the answers that came with an act, for each room that they were asked for, at the time the work was done: told a day late, nothing begins now and nobody is called. Without an exhaust they stand for this one coat. */
+/** Writes down the answers that came with an act, whatever they are, for each room that they were asked for, at the time the work was done: told a day late, nothing begins now and nobody is called. Without an exhaust they stand for this one coat. */
 export function noteStart(tx: Transaction, studioId: number, memberId: number | null, request: ActRequest, body: Record<string, unknown>, actId: number, now: number) {
   const work = solventWork(tx, studioId, request, body)
   if (!work?.solvent) return

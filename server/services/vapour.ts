@@ -82,7 +82,7 @@ function startStates(db: Database, studioId: number, starts: Map<number, StartRo
     const reminderId = calls.find(each => each.startId === row.id)?.reminderId ?? null
     const seenBy = looks.filter(each => each.reminderId === reminderId)
     return [roomId, {
-      id: row.id, at: row.at, by: names.get(row.memberId ?? 0) ?? null, exhaust: row.exhaust, reminderId,
+      id: row.id, at: row.at, by: names.get(row.memberId ?? 0) ?? null, answers: { exhaust: row.exhaust, flamesOff: row.flamesOff, nobodyElse: row.nobodyElse }, reminderId,
       seenBy: seenBy.map(each => ({ name: names.get(each.memberId) ?? '', at: each.at })),
       unseenBy: here.filter(each => each.id !== row.memberId && !seenBy.some(one => one.memberId === each.id)).map(each => each.name),
     }]

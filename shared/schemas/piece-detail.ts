@@ -1,3 +1,4 @@
+import type { VapourAnswers } from '#shared/schemas/act'
 import type { PhotoLine } from '#shared/schemas/photo'
 import type { RateWire } from '#shared/schemas/rate'
 import type { CautionWire } from '#shared/schemas/schedule'
@@ -56,6 +57,8 @@ export interface ActLine {
   detail: ActDetail
   /** Where it says they went, for an act that says nothing else. */
   placeId: number | null
+  /** What was answered about exhaust, flames and people, where solvent work asked for it. */
+  answered: VapourAnswers | null
   /** All the pieces it is about. */
   pieceIds: number[]
   /** In force on this piece: neither taken back nor moved to others. */

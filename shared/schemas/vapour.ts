@@ -1,7 +1,8 @@
 import * as z from 'zod/mini'
 import type { Contribution, Levers, RoomSums } from '#shared/vapour/picture'
 import type { CautionKey } from '#shared/library/cautions'
-import type { ExhaustAnswer, RagAnswer } from '#shared/terms'
+import type { RagAnswer } from '#shared/terms'
+import type { VapourAnswers } from '#shared/schemas/act'
 import type { CautionWire } from '#shared/schemas/schedule'
 import { fields } from '#shared/words/fields'
 
@@ -33,7 +34,7 @@ export const areaBody = z.strictObject({ areaM2: figure(0.0001, 1000, fields.are
 export interface VapourAsked { ask: 'vapour', rooms: { id: number, name: string, outdoor: boolean, sprayArea: boolean }[], cautions: CautionWire[], rules: string[] }
 
 /** A start of solvent work with the answers, and who has seen the call about it. */
-export interface StartState { id: number, at: number, by: string | null, exhaust: ExhaustAnswer, reminderId: number | null, seenBy: { name: string, at: number }[], unseenBy: string[] }
+export interface StartState { id: number, at: number, by: string | null, answers: VapourAnswers, reminderId: number | null, seenBy: { name: string, at: number }[], unseenBy: string[] }
 
 /** One room as the Safety screen shows it. `now` counts what is wet, `ahead` also what the plan puts on within a day; null where nothing gives off vapour. */
 export interface RoomVapourState {

@@ -84,7 +84,6 @@ describe('what the room\'s acts refuse', () => {
     for (const vapour of [{}, { exhaust: 'maybe', flamesOff: true, nobodyElse: true }, { ...running, flamesOff: 'yes' }, { ...running, nobodyElse: 1 }, { ...running, owner: true }, [], 'yes', null]) {
       expectSentence(await people.owner.post('/api/acts', telling('coat on', wet, { vapour })), JSON.stringify(vapour))
     }
-    for (const vapour of [{ ...running, flamesOff: false }, { ...running, nobodyElse: false }]) expect((await people.owner.post('/api/acts', telling('coat on', wet, { vapour }))).status).toBe(422)
     expect((await people.owner.post('/api/acts', telling('coat on', wet))).status).toBe(409)
     for (const figures of [{ areaM2: 0 }, { areaM2: -1 }, { areaM2: 1e9 }, { areaM2: '3' }, { thinnerGrams: -1 }, { thinnerGrams: 1e12 }]) {
       const answer = await people.owner.post('/api/acts', telling('coat on', { ...wet, ...figures }, { vapour: running }))

@@ -8,7 +8,7 @@ const clock = { now: at('14:00'), zone: studioZone('UTC') }
 const rung = (over: object) => ({ name: 'dry-to-handle', likelyAt: null, p90At: null, p98At: null, reachedAt: null, reason: null, ...over })
 const line = (over: Partial<ActLine>): ActLine => ({
   actId: 2, rootId: 1, kind: 'coat on', doneAt: at('13:00'), actDoneAt: at('13:00'), toldAt: at('13:20'), correctedAt: null, actor: 'member', by: 'Moss', correctedBy: null,
-  detail: { step: 'Gesso' }, placeId: null, pieceIds: [1], inForce: true, takenBack: false, problem: null, was: [], forecast: null, mayCorrect: true, ...over,
+  detail: { step: 'Gesso' }, placeId: null, pieceIds: [1], inForce: true, takenBack: false, problem: null, was: [], forecast: null, answered: null, mayCorrect: true, ...over,
 })
 
 describe('a rung', () => {

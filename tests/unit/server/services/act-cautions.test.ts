@@ -31,10 +31,10 @@ function workshop(given: { schedule?: string, oldObject?: boolean, place?: 'boot
   }
   const ids = start('Board', studio.places[given.place ?? 'booth'])
   let keys = 0
-  const tell = (kind: ActRequest['kind'], id: number, body: ActRequest['body'], also: { vapour?: VapourAnswers, by?: Teller, at?: number } = {}) => {
+  const tell = (kind: ActRequest['kind'], id: number, body: ActRequest['body'], also: { vapour?: VapourAnswers, by?: Teller, at?: number, doneAt?: number } = {}) => {
     const at = also.at ?? now
     const pieces = pieceStates(db, studioId, [id]).map(each => ({ id: each.id, version: each.version }))
-    return recordAct(db, studioId, also.by ?? { member: members.maker }, { clientKey: `key-of-test-${++keys}`, kind, doneAt: iso(at), pieces, body, ...also.vapour ? { vapour: also.vapour } : {} }, at)
+    return recordAct(db, studioId, also.by ?? { member: members.maker }, { clientKey: `key-of-test-${++keys}`, kind, doneAt: iso(also.doneAt ?? at), pieces, body, ...also.vapour ? { vapour: also.vapour } : {} }, at)
   }
   const made = (...what: Parameters<typeof tell>) => {
     const told = tell(...what)
@@ -132,6 +132,15 @@ describe('an old object that nobody has tested', () => {
   it('is asked of a maker, not of a helper', () => {
     const { ids: [one = 0], tell, members } = workshop({ oldObject: true, place: 'shelf' })
     expect(tell('intake answered', one, { question: 'lead', answer: 'tested, none' }, { by: { member: members.helper } })).toMatchObject({ ok: false, reason: 'not allowed' })
+  })
+})
+
+describe('solvent work that is about to begin', () => {
+  it('is held back while flames are on or others are inside; told a while after, it is a fact', () => {
+    const { ids: [one = 0], tell, made } = workshop({ schedule: 'lacquered-instrument' })
+    made('work done', one, { step: 'sand-body' }, { at: now - 2 * hour })
+    for (const said of [{ flamesOff: false }, { nobodyElse: false }]) expect(tell('began', one, { step: 'seal' }, { vapour: { ...running, ...said } }), JSON.stringify(said)).toMatchObject({ ok: false, reason: 'impossible' })
+    expect(tell('began', one, { step: 'seal' }, { vapour: { ...running, nobodyElse: false }, doneAt: now - hour })).toMatchObject({ ok: true })
   })
 })
 

@@ -5,6 +5,7 @@ import { recordAct } from '~~/server/services/acts'
 import type { Teller } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { openRoom } from '~~/server/services/keep-outs'
+import { findPiece } from '~~/server/services/piece-detail'
 import { pieceStates } from '~~/server/services/piece-states'
 import { vapourState } from '~~/server/services/vapour'
 import { addStatement, setSheetFigures, withdrawStatement } from '~~/server/services/vapour-settings'
@@ -31,15 +32,13 @@ function studioWith(place: 'booth' | 'shelf', oldObject = false) {
     return recordAct(db, studioId, given.by ?? { member: members.maker }, { clientKey: `key-of-test-${++keys}`, kind, doneAt: iso(given.doneAt ?? at), pieces, body, ...(given.vapour ? { vapour: given.vapour } : {}) }, at)
   }
   const lacquer = (no: number, given?: Parameters<typeof tell>[3]) => tell('coat on', no, { step: null, materialVersionId: studio.materialOf('nitrocellulose-lacquer') }, given)
-  return { ...studio, tell, lacquer }
+  return { ...studio, tell, lacquer, pieceIds: started.pieceIds }
 }
 
 describe('solvent work in a room', () => {
   it('is not recorded without the three answers, and says what it asks', () => {
     const { lacquer, rooms, db } = studioWith('booth')
     expect(lacquer(1)).toMatchObject({ ok: false, reason: 'conflict', current: { ask: 'vapour', rooms: [{ id: rooms.spray, name: 'Spray room' }] } })
-    expect(lacquer(1, { vapour: { ...running, flamesOff: false } })).toMatchObject({ ok: false, reason: 'impossible' })
-    expect(lacquer(1, { vapour: { ...running, nobodyElse: false } })).toMatchObject({ ok: false, reason: 'impossible' })
     expect(db.select().from(vapourStart).all()).toEqual([])
     expect(lacquer(1, { vapour: running })).toMatchObject({ ok: true })
     expect(db.select().from(vapourStart).all()).toMatchObject([{ roomId: rooms.spray, exhaust: 'running', flamesOff: true, nobodyElse: true }])
@@ -65,6 +64,18 @@ describe('solvent work in a room', () => {
     expect(db.select().from(vapourStart).all().at(-1)).toMatchObject({ at: now + 5 * hour, endedAt: null })
     expect(calls(later)).toEqual([])
     expect(lacquer(3, { at: later })).toMatchObject({ ok: false, reason: 'conflict' })
+  })
+
+  it.each([{ flamesOff: false }, { nobodyElse: false }])('is recorded with what is answered when it lies behind, and that answer stands for no other coat: %j', (said) => {
+    const { lacquer, db, studioId, members, rooms, pieceIds } = studioWith('booth')
+    const vapour = { ...running, ...said }
+    expect(lacquer(1, { vapour, doneAt: now - 30 * minute })).toMatchObject({ ok: true })
+    expect(db.select().from(vapourStart).all()).toMatchObject([{ roomId: rooms.spray, ...vapour }])
+    expect(findPiece(db, studioId, members.maker, pieceIds[0] ?? 0, now)).toMatchObject({ history: [{ kind: 'coat on', answered: vapour }, { answered: null }] })
+    expect(lacquer(2)).toMatchObject({ ok: false, reason: 'conflict', current: { ask: 'vapour' } })
+    expect(vapourState(db, studioId, members.owner, now).rooms.find(each => each.roomId === rooms.spray)?.start?.answers).toEqual(vapour)
+    // Everybody is told all the same: vapour hangs there.
+    expect(wantedReminders(db, studioId, now).filter(each => each.kind === 'vapour')).toHaveLength(1)
   })
 
   it('never begins before the start it follows', () => {
