@@ -4,6 +4,7 @@ import { correctionReach } from '~~/server/services/acts'
 import { facesOfPieces } from '~~/server/services/faces'
 import { memberNames } from '~~/server/services/member-names'
 import { actDetails } from '~~/server/services/piece-names'
+import { hiddenFrom } from '~~/server/services/private-materials'
 import type { Membership } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
@@ -27,7 +28,7 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
   const subjects = readSubjects(db, studioId, chains.flat().map(row => row.id))
   const names = memberNames(db, studioId)
   const sides = facesOfPieces(db, studioId, [folded.piece.id])
-  const told = actDetails(db, studioId, folded, chains.flat())
+  const told = actDetails(db, studioId, folded, chains.flat(), hiddenFrom(db, studioId, may(reader.role, 'see private mixes')))
   const details = (row: ActRow) => ({ ...told(row), on: toldOn(folded, row, subjects.filter(each => each.actId === row.id).map(each => each.partId), sides) })
   const roots = chains.map(chain => rootOf(chain[0]))
   const forecasts = readForecasts(db, studioId, roots)

@@ -53,6 +53,14 @@ describe('a private part', () => {
     const state = (await maker.get<{ pieces: { id: number, version: number }[] }>('/api/state')).body
     const put = await maker.post('/api/acts', { clientKey: 'mix-coat-on', kind: 'coat on', doneAt: new Date().toISOString(), pieces: [{ id: piece, version: state.pieces.find(each => each.id === piece)?.version }], body: { step: null, materialVersionId: version, name: 'House mix', size: 'normal' } })
     expect(put.status, JSON.stringify(put.body)).toBe(200)
+    // The part itself is told by mistake and taken back: no coat of it is left, and the history keeps the act.
+    const own = [...versions.recent, ...versions.others].find(each => each.name === secretName)?.versionId
+    const after = (await maker.get<{ pieces: { id: number, version: number }[] }>('/api/state')).body
+    const slip = await maker.post<{ actId: number }>('/api/acts', { clientKey: 'part-coat-on', kind: 'coat on', doneAt: new Date().toISOString(), pieces: [{ id: piece, version: after.pieces.find(each => each.id === piece)?.version }], body: { step: null, materialVersionId: own, name: secretName, size: 'normal' } })
+    expect(slip.status, JSON.stringify(slip.body)).toBe(200)
+    const back = await maker.post(`/api/acts/${slip.body.actId}/correct`, { clientKey: 'part-coat-back', takeBack: true })
+    expect(back.status, JSON.stringify(back.body)).toBe(200)
+    expect(JSON.stringify((await maker.get(`/api/pieces/${piece}`)).body)).toContain(secretName)
     await maker.post(`/api/materials/${mix}/mix`, { basedOn: 1, basis: 'volume', parts: (await maker.get<{ parts: object[] }>(`/api/materials/${mix}`)).body.parts.map(each => ({ materialId: (each as { materialId: number }).materialId, parts: 2, private: (each as { private: boolean }).private })) })
     const numbers = [secret, mix, piece, 1, 2, 3]
     const asked = Object.keys(routes).filter(file => file !== 'live.get.ts' && !/delete|sign-out|leave|auth\/studio/.test(file)).flatMap((file) => {
