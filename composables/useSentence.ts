@@ -25,7 +25,7 @@ function useCard(putOn: PutOn, mayPut: Ref<boolean>) {
   const left = ref<number[]>([])
   const chosenId = ref<number | null>(null)
   const when = ref<TimeAnswer | null>(null)
-  /** How many sentences were read: the keys of time begin anew with each. */
+  /** How many sentences were read or dropped: the keys of time begin anew with each. */
   const count = ref(0)
   const choices = computed(() => (sentence.value ? choicesOf(sentence.value, vocabulary.value.rooms) : []))
   const reads = computed(() => {
@@ -96,6 +96,7 @@ export function useSentence(putOn: PutOn, say: ReturnType<typeof provideTelling>
   }
   function drop() {
     form.empty()
+    card.count.value += 1
     card.sentence.value = null
     problem.value = null
   }

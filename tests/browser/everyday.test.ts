@@ -83,6 +83,8 @@ describe('one sentence', () => {
     const card = page.getByRole('group', { name: 'Is this meant?' })
     await card.getByText('A day is named and no hour that lies behind: give the time below.').waitFor()
     const yesterday = await card.getByLabel('Day').inputValue()
+    // The form below speaks of the same day.
+    expect(await page.getByLabel('Day').evaluateAll(fields => fields.map(field => (field as HTMLInputElement).value))).toEqual([yesterday, yesterday])
     await card.getByRole('button', { name: 'Yes, note it' }).click()
     await page.getByText('Give the time it was done.').first().waitFor()
     expect(rows('select id from coat')).toHaveLength(told)
