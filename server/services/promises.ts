@@ -35,10 +35,11 @@ export function dateEstimate(found: Estimate, { given }: Pick<Estimated, 'given'
   const at = (minutes: number) => given.zeroAt + minutes * minute
   const zone = studioZone(facts.owner.zone)
   const own = <Row extends { memberId: number | null }>(rows: readonly Row[]) => rows.filter(row => row.memberId === null)
-  const hours = { open: own(facts.hours), closed: own(facts.closures) }
+  const open = own(facts.hours).map(({ weekday, fromMin, toMin }) => ({ weekday, fromMin, toMin }))
+  const hours = { open, closed: own(facts.closures).map(({ fromDate, toDate }) => ({ fromDate, toDate })) }
   return {
     plannedAt: at(found.planned), likelyAt: at(found.likely), cautiousAt: at(found.cautious), promiseAt: promiseDay(at(found.cautious), hours, zone),
-    scenarios: found.ends.length, days: byDay(found.ends.map(at), zone), basis,
+    scenarios: found.ends.length, ends: found.ends.map(end => ({ at: at(end) })).sort((a, b) => a.at - b.at), days: byDay(found.ends.map(at), zone), hours, basis,
     causes: Object.fromEntries(promiseCauses.map(cause => [cause, found.causes[cause] / dayMin])) as Record<PromiseCause, number>,
   }
 }

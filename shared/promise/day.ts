@@ -1,6 +1,6 @@
 import { openSpans } from '#shared/open-hours'
 import type { OpenHours } from '#shared/open-hours'
-import { localDate } from '#shared/time'
+import { fromLocal, localDate, localDay, localMinutes } from '#shared/time'
 import type { StudioZone } from '#shared/time'
 
 const day = 24 * 60 * 60_000
@@ -27,3 +27,20 @@ export function byDay(instants: readonly number[], zone: StudioZone): { date: st
   }
   return [...counts].map(([date, count]) => ({ date, count }))
 }
+
+/**
+ * The instant (ms UTC) that is promised with a day somebody chose: its closing, or on a day without hours the hour (on the wall) of the day that was worked out.
+ * @param date YYYY-MM-DD as typed
+ * @param estimate its `promiseAt` in ms UTC and the studio's hours
+ * @returns null where no whole date is typed
+ */
+export function chosenDay(date: string, { promiseAt, hours }: { promiseAt: number, hours: OpenHours }, zone: StudioZone): number | null {
+  if (!/^\d{4}-\d{2}-\d{2}$/.test(date)) return null
+  if (date === localDate(promiseAt, zone)) return promiseAt
+  const { from, to } = localDay(date, zone)
+  const closing = openSpans(hours, zone, from, to).at(-1)?.toAt
+  return closing ?? fromLocal(date, localMinutes(promiseAt, zone), zone)
+}
+
+/** How many of some ends come at an instant or before it, ms UTC. */
+export const endedBy = (ends: readonly { at: number }[], at: number) => ends.filter(end => end.at <= at).length

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini'
+import type { OpenHours } from '#shared/open-hours'
 import { instant } from '#shared/schemas/act'
 import type { PromiseCause } from '#shared/terms'
 import { fields as batchFields } from '#shared/words/batch'
@@ -35,7 +36,8 @@ export interface PromiseBasis { reworkOfTen: number | null, benchShare: number |
 
 /**
  * When a batch or an order will be ready. `plannedAt` by the plan, `likelyAt` half of the ways it may go, `cautiousAt` nine of ten;
- * `promiseAt`: the end of the working day that can be promised. `days`: local dates with how many of the `scenarios` end on each.
+ * `promiseAt`: the end of the working day that can be promised. `days`: local dates with how many of the `scenarios` end on each;
+ * `ends`: when each of them ends, earliest first; `hours`: of the studio, for the closing of another day.
  * `causes`: days by which each moves the cautious date.
  */
 export interface DateEstimate {
@@ -44,6 +46,8 @@ export interface DateEstimate {
   cautiousAt: number
   promiseAt: number
   scenarios: number
+  ends: { at: number }[]
+  hours: OpenHours
   days: { date: string, count: number }[]
   causes: Record<PromiseCause, number>
   basis: PromiseBasis

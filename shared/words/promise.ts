@@ -1,3 +1,4 @@
+import { endedBy } from '#shared/promise/day'
 import type { DateEstimate, PromiseBasis, PromiseStanding } from '#shared/schemas/promise'
 import { promiseCauses } from '#shared/terms'
 import type { PromiseCause } from '#shared/terms'
@@ -16,6 +17,7 @@ export const fields = {
 } as const
 
 export const promiseRefusals = {
+  noDay: 'Choose the day that is promised.',
   past: 'That day is over. Promise a day that is still to come.',
   far: 'Promise a day within the next year.',
   noOrder: 'This batch belongs to no order. Give the order a name: a promise is made to somebody.',
@@ -52,6 +54,7 @@ export const promiseWords = {
   shareHint: 'The rest goes on customers, errands and absence.',
   keep: 'Keep these figures',
   orderName: 'Whom it is promised to: name of the order',
+  dayChosen: 'Day that is promised',
   tell: 'Who is told if it slips, and how',
   tellHint: 'May stay empty. A name with a number or an address; it stands in the call that tells of the slip.',
   chosen: (when: string) => `${when} is promised with the start of the batch.`,
@@ -60,11 +63,28 @@ export const promiseWords = {
   key: 'Each column is a day; its height, how many of the 200 ways end on it. Full columns are kept by the promise, hatched ones are not.',
 } as const
 
-export const promiseKey = (at: number, clock: Clock) => `Promise ${dateText(at, clock)}`
+export const promiseKey = (at: number | null, clock: Clock) => at === null ? 'Promise a day' : `Promise ${dateText(at, clock)}`
 
 /** "likely Tue 8 Dec, 9 of 10 by Fri 11 Dec". */
 export function datesText({ likelyAt, cautiousAt }: DateEstimate, clock: Clock): string {
   return `Likely ${dateText(likelyAt, clock)}; nine of ten ways are done by ${dateText(cautiousAt, clock)}.`
+}
+
+/**
+ * What share of the drawn ways end by a chosen day, before it is promised; rounded down, so that it never says more than was drawn. A day before nine of ten is told
+ * with the likely day and the one that nine of ten keep to. `dateAt` in ms UTC.
+ */
+export function byThenText({ ends, likelyAt, cautiousAt, promiseAt }: Pick<DateEstimate, 'ends' | 'likelyAt' | 'cautiousAt' | 'promiseAt'>, dateAt: number, clock: Clock): string {
+  const says = shareText(endedBy(ends, dateAt), ends.length)
+  return dateAt < cautiousAt ? `${says} Likely: ${dateText(likelyAt, clock)}, nine of ten by: ${dateText(promiseAt, clock)}.` : says
+}
+
+function shareText(ended: number, all: number): string {
+  if (ended === 0) return `None of the ${all} ways ends by then.`
+  if (ended === all) return `All ${all} ways end by then.`
+  const ofTen = Math.floor(ended * 10 / all)
+  if (ofTen === 0) return 'Fewer than 1 of 10 ways end by then.'
+  return ofTen === 1 ? '1 of 10 ways ends by then.' : `${ofTen} of 10 ways end by then.`
 }
 
 const causeNames: Record<PromiseCause, string> = {

@@ -10,7 +10,7 @@ import { changeBasis, readBasis } from '~~/server/services/promise-basis'
 import { makePromise, promiseForNew, promiseState } from '~~/server/services/promises'
 import { weekLoad } from '~~/server/services/week-load'
 import { studioZone } from '#shared/time'
-import { slipCall, slipText } from '#shared/words/promise'
+import { byThenText, slipCall, slipText } from '#shared/words/promise'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday.
@@ -64,6 +64,16 @@ describe('a date for an order', () => {
     expect(estimate.promiseAt).toBeGreaterThanOrEqual(estimate.cautiousAt)
     expect(new Date(estimate.promiseAt).getUTCHours()).toBe(17)
     expect(estimate.days.reduce((sum, each) => sum + each.count, 0)).toBe(200)
+  })
+
+  it('has every end, so that a day before nine of ten is told with its share, and is the owner’s to promise all the same', async () => {
+    const studio = await studioWith()
+    const { estimate } = await ask(studio)
+    const by = (at: number) => estimate.ends.filter(end => end.at <= at).length
+    expect([estimate.ends.length, by(estimate.likelyAt) >= 100, by(estimate.cautiousAt) >= 180, by(estimate.cautiousAt - 1) < 180]).toEqual([200, true, true, true])
+    const early = now + 2 * hour
+    expect(byThenText(estimate, early, { now, zone: studioZone('UTC') })).toMatch(/^None of the 200 ways ends by then\. Likely: .+, nine of ten by: .+\.$/)
+    expect(await give(studio, early)).toMatchObject({ standing: { promisedAt: early } })
   })
 
   it('is the same when it is asked again, and later with more rework', async () => {
