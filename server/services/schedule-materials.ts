@@ -16,12 +16,13 @@ export function scheduleMaterials(db: Database, owner: typeof studio.$inferSelec
   const versionIds = newest.map(row => row.version.id)
   const sheets = dryingMaterials(db, owner.id, versionIds)
   const windows = db.select().from(recoatWindow).where(scoped(recoatWindow, owner.id, inArray(recoatWindow.versionId, versionIds))).orderBy(asc(recoatWindow.ordinal)).all()
-  const open = sheetFigures(db, owner.id, versionIds, 'open time')
+  const [open, closed] = (['open time', 'closed assembly'] as const).map(name => sheetFigures(db, owner.id, versionIds, name))
   const materials = newest.flatMap(({ id, name, version }): ScheduleMaterialWire[] => {
     const drying = sheets.get(version.id)
     if (!drying) return []
+    const openMin = open?.get(version.id)?.least
     const recoveries = windows.filter(each => each.versionId === version.id).map(({ recovery, recoveryMin }) => (recovery === null ? null : { name: recovery, minutes: recoveryMin }))
-    return [{ id, name, kind: version.kind, glue: version.film === 'joint', solventBorne: !['water', 'none'].includes(version.solvent), drying, recoveries, cautions: version.cautions, openMin: open.get(version.id)?.least ?? null }]
+    return [{ id, name, kind: version.kind, glue: version.film === 'joint', solventBorne: !['water', 'none'].includes(version.solvent), drying, recoveries, cautions: version.cautions, workMin: openMin === undefined ? null : openMin + (closed?.get(version.id)?.least ?? 0) }]
   })
   const numbers = (keys: readonly string[]) => newest.filter(row => row.libraryKey !== null && keys.includes(row.libraryKey)).map(row => row.id)
   const rules = systemRules.map(rule => ({ under: numbers(rule.under), over: numbers(rule.over), minMin: rule.minMin, text: rule.text })).filter(rule => rule.under.length > 0 && rule.over.length > 0)

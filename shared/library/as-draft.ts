@@ -1,17 +1,21 @@
 import { dryingMaterial, libraryFigure } from '#shared/library/types'
-import type { LibraryMaterial, LibrarySchedule } from '#shared/library/types'
+import type { FigureName, LibraryMaterial, LibrarySchedule } from '#shared/library/types'
 import type { ScheduleMaterialWire } from '#shared/schemas/schedule'
 import type { ScheduleDraft } from '#shared/schemas/schedule-draft'
 
 /** The library's materials numbered from 1, as an editor sees a studio's. */
 export function librarySheets(materials: readonly LibraryMaterial[]): ReadonlyMap<number, ScheduleMaterialWire> {
-  const openMin = (material: LibraryMaterial) => {
-    const figure = libraryFigure(material, 'open time')
+  const least = (material: LibraryMaterial, name: FigureName) => {
+    const figure = libraryFigure(material, name)
     return figure?.low ?? figure?.typical ?? null
+  }
+  const workMin = (material: LibraryMaterial) => {
+    const open = least(material, 'open time')
+    return open === null ? null : open + (least(material, 'closed assembly') ?? 0)
   }
   return new Map(materials.map((material, at) => [at + 1, {
     id: at + 1, name: material.name, kind: material.kind, glue: material.film === 'joint', solventBorne: !['water', 'none'].includes(material.solvent), drying: dryingMaterial(material),
-    recoveries: material.windows.map(({ recovery, recoveryMin }) => (recovery === null ? null : { name: recovery, minutes: recoveryMin })), cautions: [...material.cautions], openMin: openMin(material),
+    recoveries: material.windows.map(({ recovery, recoveryMin }) => (recovery === null ? null : { name: recovery, minutes: recoveryMin })), cautions: [...material.cautions], workMin: workMin(material),
   }]))
 }
 

@@ -162,11 +162,11 @@ function waitProblems(reckoned: Reckoned): ScheduleProblem[] {
   return [...shutWindows(reckoned), ...endless, ...narrow, ...tight]
 }
 
-/** Glue-ups of one piece that take longer than their glue stays open by its sheet: spreading, joining and clamping are one step. */
+/** Glue-ups of one piece that take longer than their glue can be worked by its sheet: spreading, joining and clamping are one step. */
 function openProblems({ steps }: ScheduleDraft, sheets: Sheets): ScheduleProblem[] {
   return steps.flatMap((step) => {
     const glue = step.kind === 'glue-up' ? sheetOf(step, sheets) : null
-    return glue && glue.openMin !== null && step.pieceMin > glue.openMin ? [caution('open too short', { step: step.key, what: glue.name, minutes: glue.openMin })] : []
+    return glue && glue.workMin !== null && step.pieceMin > glue.workMin ? [caution('open too short', { step: step.key, what: glue.name, minutes: glue.workMin })] : []
   })
 }
 

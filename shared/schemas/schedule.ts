@@ -59,7 +59,7 @@ export interface ScheduleWire {
 /** GET /api/schedules/7: the same with its steps and what each waits for. */
 export interface ScheduleDetailWire extends ScheduleWire { steps: ScheduleStepWire[], links: ScheduleLinkWire[] }
 
-/** A material as the editor needs it: enough to reckon a film in the browser. `recoveries` stand beside its windows, null where the sheet asks for none; `openMin`: least minutes that it stays open once spread, null where the sheet says nothing of it. */
+/** A material as the editor needs it: enough to reckon a film in the browser. `recoveries` stand beside its windows, null where the sheet asks for none; `workMin`: least minutes from spreading glue to the last that a joint can be moved (open time, and closed assembly where the sheet has it), null where the sheet gives no open time. */
 export interface ScheduleMaterialWire {
   id: number
   name: string
@@ -69,7 +69,7 @@ export interface ScheduleMaterialWire {
   drying: DryingMaterial
   recoveries: ({ name: string, minutes: number } | null)[]
   cautions: string[]
-  openMin: number | null
+  workMin: number | null
 }
 
 /** What is known of one material over another, both by number: the shortest wait in minutes at the sheet's climate; null: never. */

@@ -13,8 +13,8 @@ export type StartAdvice =
   | { code: 'pot-life', minutes: number, sheetMinutes: number, tempC: number }
   /** `minutes`: the least that a mix lasts; `each`: pieces that one is enough for. */
   | { code: 'several-mixes', minutes: number, pieces: number, each: number, mixes: number }
-  /** `minutes`: the least that glue stays open; `takes`: hands-on minutes of one piece; `room`: where it would stay open longer. */
-  | { code: 'open-time', minutes: number, takes: number, room: 'cooler' | 'warmer' | null }
+  /** `minutes`: the least that glue stays open; `joined`: how long a joint may be moved after that, 0 where nobody knows; `takes`: hands-on minutes of one piece; `room`: where it would stay open longer. */
+  | { code: 'open-time', minutes: number, joined: number, takes: number, room: 'cooler' | 'warmer' | null }
   | { code: 'pack-early', when: string }
 
 /** How long glue stays open, in whole minutes and never too many. */
@@ -30,7 +30,7 @@ export function startAdviceText(facts: StartAdvice, units: Units = 'metric'): st
     case 'still-air': return 'Somebody said that the air moves here: leaf wants it still.'
     case 'pot-life': return `At ${temperatureText(facts.tempC, units)} what is mixed lasts about ${Math.round(facts.minutes)} min; the sheet says ${Math.round(facts.sheetMinutes)}. A deep pot goes off sooner: mix less.`
     case 'several-mixes': return `What is mixed may go off after ${Math.floor(facts.minutes)} min: enough for ${facts.each} of these ${facts.pieces}. Mix ${facts.mixes} times.`
-    case 'open-time': return `Once spread, this glue may skin over or set ${facts.minutes < 1 ? 'within a minute' : `after ${openSpan(facts.minutes)}`}; this glue-up takes ${facts.takes}. Join fewer parts at once, have another pair of hands,${facts.room === null ? '' : ` work in a ${facts.room} room,`} or use a glue that stays open longer.`
+    case 'open-time': return `Once spread, this glue may skin over or set ${facts.minutes < 1 ? 'within a minute' : `after ${openSpan(facts.minutes)}`}${facts.joined < 1 ? '' : `, and joined it can be moved for ${openSpan(facts.joined)} more`}; this glue-up takes ${facts.takes}. Spread only as much as is joined within that, have another pair of hands,${facts.room === null ? '' : ` work in a ${facts.room} room,`} or use a glue that stays open longer.`
     case 'pack-early': return `Wrapped before ${facts.when} it may print: two days at least, longer in damp air, and never finish to finish.`
   }
 }

@@ -50,7 +50,7 @@ const sentences: Record<ScheduleProblemCode, (said: Said) => string> = {
   'no end': ({ step, other, what }) => `${step} waits until ${other} is ${rung(what)}, which has no end in sight in the studio’s usual air.`,
   'window narrow': ({ step, other }) => `${step}: the window after ${other} is narrower than its doubt, so only a touch test finds it.`,
   'round too tight': ({ step, minutes }) => `${step} asks for more coats a day than dry in one: likely ${waitSpan(minutes)} between two.`,
-  'open too short': ({ step, what, minutes }) => `${step} takes longer than its glue may stay open: ${what}, ${openSpan(minutes)} by its sheet. Join fewer parts at once, have another pair of hands, or choose a glue that stays open longer.`,
+  'open too short': ({ step, what, minutes }) => `${step} takes longer than its glue can be worked: ${what}, ${openSpan(minutes)} by its sheet. Spread only as much as is joined within that, have another pair of hands, or choose a glue that stays open longer.`,
 }
 
 /** What is wrong, with the step named: “Second coat” lays nothing. Choose its material. */

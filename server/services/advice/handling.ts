@@ -57,12 +57,12 @@ function severalMixes(pot: Pot, alike: readonly SoonTurn[]): StartAdvice | null 
   return each === null || each >= alike.length ? null : { code: 'several-mixes', minutes: pot.least, pieces: alike.length, each, mixes: Math.ceil(alike.length / each) }
 }
 
-/** A glue-up of one piece that takes longer than its glue stays open in its room: spreading, joining and clamping are one step. */
+/** A glue-up of one piece that takes longer than its glue stays open in its room, and the joint after it: spreading, joining and clamping are one step. */
 function openAdvice({ db, owner }: Asked, soon: readonly SoonTurn[], airs: Airs) {
   const glued = soon.filter(({ turn }) => turn.step.kind === 'glue-up')
   const openOf = openTimesOf(db, owner, [...new Set(glued.flatMap(each => each.turn.step.materialVersionId ?? []))], airs)
   return ({ turn, group, at }: SoonTurn): StartAdvice[] => {
     const open = turn.step.kind === 'glue-up' ? openOf(turn.step.materialVersionId, group?.roomId ?? null, at) : null
-    return open && turn.pieceMin > open.least ? [{ code: 'open-time', minutes: open.least, takes: turn.pieceMin, room: open.room }] : []
+    return open && turn.pieceMin > open.least + open.joined ? [{ code: 'open-time', minutes: open.least, joined: open.joined, takes: turn.pieceMin, room: open.room }] : []
   }
 }

@@ -68,17 +68,17 @@ describe('what cannot be in a draft', () => {
     expect(materialOf('artists-oil')).toBeGreaterThan(0)
   })
 
-  it('warns of a glue-up that takes longer than its glue stays open, and of none without a figure', () => {
-    // Yellow wood glue is open for 4 min at the least.
+  it('warns of a glue-up that takes longer than its glue can be worked, and of none without a figure', () => {
+    // Yellow wood glue is open for 4 min at the least, and joined can be moved for 10 more.
     const frame = libraryOne('mitred-frame')
     const of = (pieceMin: number, own = sheets) => {
       const draft = changeStep(frame, 'glue-up', { pieceMin }, own)
       return scheduleProblems(draft, own, reckonSchedule(draft, own, films), rules).filter(each => each.code === 'open too short' && each.step === 'glue-up').map(each => `${each.kind}: ${problemText(each, draft)}`)
     }
-    expect(of(5)).toEqual(['caution: “Glue up the frame” takes longer than its glue may stay open: Yellow wood glue (PVA, indoor), 4 min by its sheet. Join fewer parts at once, have another pair of hands, or choose a glue that stays open longer.'])
-    expect(of(4)).toEqual([])
-    expect(of(5, new Map([...sheets].map(([id, sheet]) => [id, { ...sheet, openMin: null }])))).toEqual([])
-    expect(of(5, new Map([...sheets].map(([id, sheet]) => [id, { ...sheet, openMin: 0.1 }])))[0]).toContain('less than a minute by its sheet')
+    expect(of(15)).toEqual(['caution: “Glue up the frame” takes longer than its glue can be worked: Yellow wood glue (PVA, indoor), 14 min by its sheet. Spread only as much as is joined within that, have another pair of hands, or choose a glue that stays open longer.'])
+    expect(of(14)).toEqual([])
+    expect(of(15, new Map([...sheets].map(([id, sheet]) => [id, { ...sheet, workMin: null }])))).toEqual([])
+    expect(of(15, new Map([...sheets].map(([id, sheet]) => [id, { ...sheet, workMin: 0.1 }])))[0]).toContain('less than a minute by its sheet')
   })
 
   it('says it of a step without a name too, and of nothing at all', () => {

@@ -225,9 +225,9 @@ const kinds: Record<AdviceCode | StartAdvice['code'], Kind> = {
     wrong: s => [22, 22].forEach(tempC => resin(s, tempC)), tamed: s => resin(s, 22),
   },
   'open-time': {
-    // The sheet's own air, 21 C: 4 min at the least, and a frame takes 8. Paste is open for 15 min, and a lining takes 10.
-    about: 'turn', says: /^Once spread, this glue may skin over or set after 4 min; this glue-up takes 8\. Join fewer parts at once/,
-    wrong: s => gluing(s, 'mitred-frame', 'glue-up'), tamed: s => gluing(s, 'painted-waxed-box', 'line-lid'),
+    // Bookbinder's glue is open for 1 min at 20 C at the least, less at 21, and a spine takes 10. A frame takes 8: 4 min open, 10 more joined.
+    about: 'turn', says: /^Once spread, this glue may skin over or set within a minute; this glue-up takes 10\. Spread only as much as is joined within that/,
+    wrong: s => gluing(s, 'cased-book', 'line-spine'), tamed: s => gluing(s, 'mitred-frame', 'glue-up'),
   },
   'pack-early': {
     about: 'turn', at: now + 40 * hour, says: /^Wrapped before 10:00 it may print/,

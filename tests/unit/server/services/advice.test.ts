@@ -56,8 +56,8 @@ describe('advice where it acts', () => {
   it('comes before a coat goes on: the room is under what the paint needs, the pressing first', () => {
     const studio = testStudio(now)
     const ids = start(studio, 'painted-waxed-box', ['Box 1'])
-    // Gluing up the box is next too: 10 minutes, with glue that may be open for 5.
-    expect(codes(studio)).toEqual(['air-assumed', 'open-time'])
+    // Gluing up the box is next too: 10 minutes, with glue that is open for 5 and can be moved for 10 more.
+    expect(codes(studio)).toEqual(['air-assumed'])
     read(studio, studio.rooms.bench, 6, 0.6)
     const [first] = adviceNow(studio.db, studio.studioId, ids, now)
     expect(first).toMatchObject({ code: 'chilled', presses: true, coatIds: [] })

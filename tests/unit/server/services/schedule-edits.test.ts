@@ -27,9 +27,9 @@ let keys = 0
 const start = (scheduleId: number, name: string) => startBatch(db, studioId, { member: members.maker }, { clientKey: `schedule-batch-${keys += 1}`, name, scheduleId, pieces: [name], sizeUnits: 1, placeId: places.shelf, order: null, startsAt: new Date(now).toISOString(), oldObject: false }, now)
 
 describe('what can be laid', () => {
-  it('comes with the least minutes that glue stays open, and without where its sheet says nothing', () => {
-    const open = (name: string) => [...sheets.values()].find(each => each.name === name)?.openMin
-    expect([open('Yellow wood glue (PVA, indoor)'), open('Liquid hide glue'), open('Shellac')]).toEqual([4, 8, null])
+  it('comes with the least minutes that glue can be worked, and without where its sheet says nothing', () => {
+    const worked = (name: string) => [...sheets.values()].find(each => each.name === name)?.workMin
+    expect(['Yellow wood glue (PVA, indoor)', 'Liquid hide glue', 'Wheat or rice paste', 'Shellac'].map(worked)).toEqual([4 + 10, 8 + 25, 15, null])
   })
 })
 
