@@ -13,10 +13,11 @@ export function useSession() {
     return found
   }
 
-  async function signOut() {
+  /** Signs out and goes to one of the doors. */
+  async function signOut(door = '/sign-in') {
     await callApi('/api/auth/sign-out', { method: 'POST' })
     session.value = null
-    await navigateTo('/sign-in')
+    await navigateTo(door)
   }
 
   /** Turns to another of one's studios; everything on the page belongs to the old one, so it is loaded anew. */

@@ -9,7 +9,7 @@ import type { Refusal } from '~~/server/utils/errors'
 import { makePasswordHash, passwordFits } from '~~/server/utils/password'
 import { scoped } from '~~/server/utils/scoped'
 import { hashToken, newToken } from '~~/server/utils/token'
-import type { InvitationWire, Join, MemberPatch, MemberWire, NewInvitation } from '#shared/schemas/member'
+import type { InvitationWire, Join, MemberPatch, MemberWire, NewInvitation, OfferWire } from '#shared/schemas/member'
 import type { Role, StepKind } from '#shared/terms'
 import { settings } from '#shared/words/settings'
 
@@ -87,12 +87,20 @@ export function withdrawInvitation(db: Database, studioId: number, invitationId:
   return gone.changes > 0 ? { ok: true } : absent()
 }
 
-/** What an invitation offers, for the page that its link opens. */
-export function readInvitation(db: Database | Transaction, token: string, now: number) {
+/** An invitation that is still open. */
+function readInvitation(db: Database | Transaction, token: string, now: number) {
   const row = db.select({ id: invitation.id, studioId: invitation.studioId, role: invitation.role, email: invitation.email, studioName: studio.name }).from(invitation)
     .innerJoin(studio, eq(studio.id, invitation.studioId))
     .where(and(eq(invitation.tokenHash, hashToken(token)), isNull(invitation.usedAt), gt(invitation.expiresAt, now))).get()
   return row ?? null
+}
+
+/** What an invitation says to whoever opens it: `member`, whether they belong to its studio already. */
+export function readOffer(db: Database, token: string, signedIn: SignedIn | null, now: number): OfferWire | null {
+  const found = readInvitation(db, token, now)
+  if (!found) return null
+  const own = signedIn && db.select({ id: member.id }).from(member).where(scoped(member, found.studioId, eq(member.personId, signedIn.id), isNull(member.leftAt))).get()
+  return { studio: found.studioName, role: found.role, email: found.email, member: Boolean(own) }
 }
 
 /** Writes somebody new, who must not be known yet. */

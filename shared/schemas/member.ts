@@ -22,6 +22,9 @@ export type NewInvitation = z.output<typeof invitationBody>
 /** An invitation that is still open. The link's secret is told once, when it is made. */
 export interface InvitationWire { id: number, role: Role, email: string | null, expiresAt: string }
 
+/** GET /api/join/[token]: where an invitation leads; `member`, whether whoever asks belongs there already. */
+export interface OfferWire { studio: string, role: Role, email: string | null, member: boolean }
+
 /** POST /api/join/[token]; empty for somebody who is signed in. */
 export const joinBody = z.strictObject({ person: z.optional(newPerson) })
 export type Join = z.output<typeof joinBody>

@@ -1,6 +1,6 @@
 import { absent } from '~~/server/utils/errors'
 import { defineStudioHandler } from '~~/server/utils/handler'
-import { readInvitation } from '~~/server/services/people'
+import { readOffer } from '~~/server/services/people'
 import { settings } from '#shared/words/settings'
 import { tokenParams } from '#shared/schemas/common'
 
@@ -8,8 +8,5 @@ import { tokenParams } from '#shared/schemas/common'
 export default defineStudioHandler({
   may: 'anyone',
   params: tokenParams,
-  run: ({ db, params, now }) => {
-    const offer = readInvitation(db, params.token, now)
-    return offer ? { studio: offer.studioName, role: offer.role, email: offer.email } : absent(settings.invitationAbsent)
-  },
+  run: ({ db, person, params, now }) => readOffer(db, params.token, person, now) ?? absent(settings.invitationAbsent),
 })

@@ -94,7 +94,8 @@ describe('people', () => {
     const { body } = await owner.post<{ path: string }>('/api/invitations', { role: 'maker' })
     const first = visitor(server.origin)
     const person = { name: 'Moss', email: 'moss@example.test', password: testPassword }
-    expect((await first.get(`/api${body.path}`)).body).toEqual({ studio: 'Fir Lane', role: 'maker', email: null })
+    expect((await first.get(`/api${body.path}`)).body).toEqual({ studio: 'Fir Lane', role: 'maker', email: null, member: false })
+    expect((await owner.get(`/api${body.path}`)).body).toMatchObject({ member: true })
     expect((await first.post(`/api${body.path}`, { person })).status).toBe(200)
     expect((await visitor(server.origin).post(`/api${body.path}`, { person: { ...person, email: 'elm@example.test' } })).status).toBe(404)
   })
