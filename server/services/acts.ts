@@ -5,7 +5,7 @@ import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
 import { heldPiece } from '~~/server/services/handling'
 import { refuseByCaution } from '~~/server/services/act-cautions'
-import { makeBatch, refuseRegroup } from '~~/server/services/regroup'
+import { makeBatch, refuseCancelled, refuseRegroup } from '~~/server/services/regroup'
 import { hiddenFrom } from '~~/server/services/private-materials'
 import { refuseWitness } from '~~/server/services/witnesses'
 import { noteStart } from '~~/server/services/vapour-starts'
@@ -110,6 +110,7 @@ function findRefusal(tx: Transaction, studioId: number, teller: Teller, request:
     ?? checkTeller(tx, studioId, teller, request.kind, body, pieces, now)
     ?? checkReferences(tx, studioId, body, 'member' in teller && may(teller.member.role, 'see private mixes'))
     ?? (request.kind === 'regrouped' ? refuseRegroup(tx, studioId, pieces.map(each => each.id), body) : null)
+    ?? (request.kind === 'cancelled' ? refuseCancelled(tx, studioId, pieces.map(each => each.id)) : null)
     ?? refuseWitness(tx, studioId, body)
     ?? refuseByCaution(tx, studioId, actingOf(teller).memberId, request, body, now)
 }

@@ -1,6 +1,7 @@
 import { and, desc, eq, isNull, ne } from 'drizzle-orm'
 import { audit, batch, piece } from '~~/db/schema'
 import { memberNames } from '~~/server/services/member-names'
+import { isBatchName } from '~~/server/services/regroup'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -34,11 +35,12 @@ export function renamePiece(db: Database, studioId: number, who: Membership, pie
   })
 }
 
-/** Calls a batch otherwise. */
+/** Calls a batch otherwise. Two batches with pieces here have two names. */
 export function renameBatch(db: Database, studioId: number, who: Membership, batchId: number, name: string, now: number): Renamed | Refusal {
   return change<Renamed | Refusal>(db, studioId, 'work', (tx): Renamed | Refusal => {
     const row = tx.select().from(batch).where(owned(batch, studioId, batchId)).get()
     if (!row) return absent()
+    if (row.name !== name && isBatchName(tx, studioId, name, [], batchId)) return impossible(regroupRefusals.batchTaken(name), { name: regroupRefusals.batchTaken(name) })
     if (row.name !== name) {
       tx.update(batch).set({ name }).where(owned(batch, studioId, batchId)).run()
       note(tx, studioId, { table: 'batch', rowId: batchId, was: row.name, name, who, now })

@@ -30,6 +30,7 @@ export const regroupRefusals = {
   noBatch: 'This batch is not in this studio.',
   there: (batch: string) => `They are of ${batch} already.`,
   otherSchedule: (piece: string) => `${piece} goes by another schedule, or another edition of it. A batch has one.`,
+  batchTaken: (name: string) => `Another batch is called ${name}. Give this one a name of its own, or put the pieces into that one.`,
   nameTaken: (name: string) => `Another piece of the batch is called ${name}. Give this one a name of its own.`,
   sameName: (piece: string) => `Two pieces would be called ${piece}. Give one of them another name first.`,
 } as const

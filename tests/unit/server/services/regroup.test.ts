@@ -7,6 +7,8 @@ import { correctAct } from '~~/server/services/corrections'
 import { pieceStates } from '~~/server/services/piece-states'
 import type { ActRequest } from '#shared/schemas/act'
 import type { Role } from '#shared/terms'
+import { renameBatch } from '~~/server/services/piece-renames'
+import { actRefusals } from '#shared/words/acts'
 import { regroupRefusals } from '#shared/words/batch'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
@@ -59,6 +61,23 @@ describe('splitting a batch', () => {
   })
 })
 
+describe('the name of a batch', () => {
+  it('is not taken while another with pieces here has it, by splitting or by renaming', () => {
+    const studio = withBatches()
+    const taken = regroupRefusals.batchTaken('more boxes')
+    expect(tell(studio, 'regrouped', studio.boxes.pieceIds.slice(0, 1), { name: 'more boxes' })).toMatchObject({ ok: false, reason: 'malformed', fields: { name: taken } })
+    expect(renameBatch(studio.db, studio.studioId, studio.members.maker, studio.boxes.batchId, 'more boxes', now)).toMatchObject({ ok: false, fields: { name: taken } })
+    expect(renameBatch(studio.db, studio.studioId, studio.members.maker, studio.boxes.batchId, 'boxes', now)).toMatchObject({ ok: true, was: 'Boxes' })
+  })
+
+  it('is free when no piece of that batch is left here, or all of it go into the new one', () => {
+    const studio = withBatches()
+    expect(tell(studio, 'gone', studio.more.pieceIds, { how: 'sold' })).toMatchObject({ ok: true })
+    expect(tell(studio, 'regrouped', studio.boxes.pieceIds.slice(0, 1), { name: 'More boxes' })).toMatchObject({ ok: true })
+    expect(tell(studio, 'regrouped', studio.boxes.pieceIds.slice(1), { name: 'Boxes' })).toMatchObject({ ok: true })
+  })
+})
+
 describe('merging batches', () => {
   it('takes pieces into another batch of the same edition, after its last, and under its order', () => {
     const studio = withBatches()
@@ -107,6 +126,17 @@ describe('a batch that is cancelled', () => {
     expect(states[0]?.groups.flatMap(group => group.films)).toHaveLength(1)
     correctAct(studio.db, studio.studioId, { member: studio.members.maker }, told.actId, { clientKey: key(), takeBack: true }, now)
     expect(pieceStates(studio.db, studio.studioId, studio.boxes.pieceIds).every(state => state.turns.length > 0)).toBe(true)
+  })
+})
+
+describe('cancelling again', () => {
+  it('is refused when nothing is left, and cancels the rest when something is', () => {
+    const studio = withBatches()
+    const [first = 0, ...others] = studio.boxes.pieceIds
+    expect(tell(studio, 'cancelled', [first])).toMatchObject({ ok: true })
+    expect(tell(studio, 'cancelled', [first])).toMatchObject({ ok: false, reason: 'impossible', message: actRefusals.cancelledBefore })
+    expect(tell(studio, 'cancelled', [first, ...others])).toMatchObject({ ok: true })
+    expect(tell(studio, 'cancelled', [first, ...others])).toMatchObject({ ok: false, message: actRefusals.cancelledBefore })
   })
 })
 
