@@ -1,11 +1,13 @@
 import type { MilestonePrediction, ReasonCode } from '#shared/drying/types'
+import type { FilmState } from '#shared/schemas/piece-state'
+import { milestoneNames } from '#shared/terms'
 import type { GoneWay } from '#shared/terms'
 import type { ActLine, NameLine, StepLine } from '#shared/schemas/piece-detail'
 import { clockTime, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
 import { actRefusals } from '#shared/words/acts'
 import { listText } from '#shared/words/group'
-import { actText, goneTexts, titled } from '#shared/words/steps'
+import { actText, goneTexts, lowerFirst, milestoneText, titled } from '#shared/words/steps'
 import { asSentence, predictionReason } from '#shared/words/verdict'
 import type { ProblemCode } from '#shared/work/types'
 
@@ -33,6 +35,7 @@ export const pieceWords = {
   amongGone: 'Among those that are gone',
   nowhere: 'nobody has said where',
   steps: 'Steps',
+  lastFilm: 'the last film',
   due: 'due',
   promised: 'promised',
   correct: 'Correct',
@@ -117,8 +120,28 @@ export function windowText({ opensAt, shutsAt }: { opensAt: number | null, shuts
   return shutsAt === null ? `recoat window opens ${roughTime(opensAt, clock, 'up')}` : `recoat window opens ${roughTime(opensAt, clock, 'up')}, ${end}`
 }
 
-/** "3 of 9 steps done". */
-export const progressText = (done: number, of: number) => `${done} of ${of} ${of === 1 ? 'step' : 'steps'} done`
+/** "3 of 9 steps done"; of all of them what is not over yet: "16 of 16 steps done, and “Wax” still dries: cured from Fri". */
+export function progressText(done: number, of: number, films: readonly Lying[], clock: Clock): string {
+  const says = `${done} of ${of} ${of === 1 ? 'step' : 'steps'} done`
+  const still = done < of ? null : stillText(films, clock)
+  return still === null ? says : `${says}, and ${still}`
+}
+
+type Lying = Pick<FilmState, 'step' | 'material' | 'hold' | 'milestones'>
+
+/** What the last film has before it, the one that is over latest; null where none lies. No promise is later than any. */
+function stillText(films: readonly Lying[], clock: Clock): string | null {
+  const ends = films.map((film) => {
+    const rung = film.milestones.findLast(each => each.reachedAt === null)
+    return { film, rung, at: rung?.p90At ?? Number.MAX_VALUE }
+  }).filter(each => each.film.hold !== null || (each.rung !== undefined && each.at > clock.now))
+  const [last] = ends.sort((a, b) => b.at - a.at)
+  if (!last) return null
+  const what = last.film.step ? titled(last.film.step) : lowerFirst(last.film.material ?? pieceWords.lastFilm)
+  const state = last.film.hold === null ? `${what} still dries` : `${what} is still held`
+  const name = milestoneNames.find(each => each === last.rung?.name)
+  return name === undefined || last.at === Number.MAX_VALUE || last.at <= clock.now ? state : `${state}: ${milestoneText(name)} from ${roughTime(last.at, clock, 'up')}`
+}
 
 /** "Coat on: first paint on the lid top." */
 export const factText = (line: Pick<ActLine, 'kind' | 'detail'>) => asSentence(actText(line.kind, line.detail))

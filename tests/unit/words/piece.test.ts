@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { ActLine } from '#shared/schemas/piece-detail'
 import { studioZone } from '#shared/time'
-import { fateText, originText, problemText, reasonSentence, rungText, sharedReason, toldText, waitsForText, wasText, whenText, windowText } from '#shared/words/piece'
+import { fateText, originText, problemText, progressText, reasonSentence, rungText, sharedReason, toldText, waitsForText, wasText, whenText, windowText } from '#shared/words/piece'
 
 const at = (time: string) => Date.parse(`2026-04-07T${time}:00Z`)
 const clock = { now: at('14:00'), zone: studioZone('UTC') }
@@ -37,6 +37,21 @@ describe('the reason of several rungs', () => {
     expect(sharedReason([rung(cold), rung({ likelyAt: at('15:00'), p90At: at('15:10') })])).toBeNull()
     expect(sharedReason([rung(cold), rung({ ...cold, reachedAt: at('13:00') })])).toBeNull()
     expect(sharedReason([])).toBeNull()
+  })
+})
+
+describe('how far a piece is', () => {
+  const film = (over: object) => ({ step: 'Wax', material: 'Paste wax', hold: null, milestones: [rung({ reachedAt: at('13:00') }), rung({ name: 'cured', likelyAt: at('15:00'), p90At: at('18:00') })], ...over })
+  it('counts the steps, and with the last of them done names what is still to be waited for', () => {
+    expect(progressText(3, 9, [film({})], clock)).toBe('3 of 9 steps done')
+    expect(progressText(9, 9, [], clock)).toBe('9 of 9 steps done')
+    expect(progressText(9, 9, [film({})], clock)).toBe('9 of 9 steps done, and “Wax” still dries: cured from 18:00')
+    expect(progressText(9, 9, [film({ milestones: [rung({ name: 'cured', p90At: at('13:30') })] })], clock)).toBe('9 of 9 steps done')
+  })
+  it('speaks by the film that is over last, and promises nothing where no time is known', () => {
+    const unknown = film({ step: null, milestones: [rung({ reason: 'never' })] })
+    expect(progressText(9, 9, [film({}), unknown], clock)).toBe('9 of 9 steps done, and paste wax still dries')
+    expect(progressText(1, 1, [film({ hold: 'clamps', milestones: [] })], clock)).toBe('1 of 1 step done, and “Wax” is still held')
   })
 })
 
