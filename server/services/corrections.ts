@@ -2,6 +2,7 @@ import { eq, inArray } from 'drizzle-orm'
 import { act, part } from '~~/db/schema'
 import { actingOf, checkTime, parseActBody } from '~~/server/services/acts'
 import type { Recorded, Teller } from '~~/server/services/acts'
+import { moveStart, refuseOutOfOrder, refuseStartCorrection } from '~~/server/services/batch-start'
 import { refuseByCaution } from '~~/server/services/act-cautions'
 import { refuseOtherSchedule } from '~~/server/services/regroup'
 import { refuseNewSolventWork } from '~~/server/services/vapour-starts'
@@ -43,11 +44,14 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
     const doneAt = request.doneAt === undefined ? old.doneAt : Date.parse(request.doneAt)
     const wrongBatch = old.kind === 'regrouped' && !request.takeBack ? refuseOtherSchedule(tx, studioId, piecesOf(tx, studioId, subjects.map(each => each.partId)), body, old.rootActId ?? old.id) : null
     if (wrongBatch) return wrongBatch
+    const order = request.takeBack ? null : refuseOutOfOrder(tx, studioId, { ...old, was, subjects }, request, now)
+    if (order) return order
     const caution = request.takeBack ? null : refuseCorrected(tx, studioId, teller, { old, body, was, subjects }, now)
     if (caution) return caution
     const rootId = old.rootActId ?? old.id
     const newId = insertAct(tx, studioId, { clientKey: request.clientKey, kind: old.kind, doneAt, toldAt: now, acting: actingOf(teller), body: { ...body }, subjects, replaces: { id: old.id, rootId }, voided: request.takeBack ?? false })
     const pieceIds = piecesOf(tx, studioId, [...was, ...subjects].map(each => each.partId))
+    if (old.kind === 'batch started') moveStart(tx, studioId, rootId, doneAt)
     refold(tx, studioId, pieceIds)
     afterAct(tx, studioId, { actId: rootId, kind: old.kind, body: { ...body }, pieceIds, memberId: actingOf(teller).memberId, doneAt, now })
     return { ok: true, actId: newId, repeated: false }
@@ -55,7 +59,9 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
 }
 
 function findRefusal(tx: Transaction, studioId: number, teller: Teller, old: ActRow, was: readonly Subject[], request: CorrectionRequest, now: number): Refusal | null {
-  if (!(old.kind in actBodies)) return impossible(actRefusals.batchStart)
+  if (old.kind !== 'batch started' && !(old.kind in actBodies)) return impossible(actRefusals.notTold)
+  const start = old.kind === 'batch started' ? refuseStartCorrection(request) : null
+  if (start) return start
   const member = 'member' in teller ? teller.member : null
   // At the bench nobody is known: it takes back or moves in time what it told itself, and no more.
   const more = request.pieces ?? request.times ?? request.body
@@ -71,7 +77,7 @@ interface Corrected { old: ActRow, body: Record<string, unknown>, was: readonly 
 
 /** What a caution refuses at an act it refuses at its correction: no wet solvent film is corrected into a bedroom. The three answers were given with the act, for what it was. */
 function refuseCorrected(tx: Transaction, studioId: number, teller: Teller, { old, body, was, subjects }: Corrected, now: number): Refusal | null {
-  if (old.kind === 'began') return null
+  if (old.kind === 'began' || old.kind === 'batch started') return null
   const asTold = (of: readonly Subject[], said: Record<string, unknown>): ActRequest => ({
     clientKey: old.clientKey, kind: old.kind as TellableKind, doneAt: new Date(old.doneAt).toISOString(), pieces: piecesOf(tx, studioId, of.map(each => each.partId)).map(id => ({ id, version: 1 })),
     partIds: of.map(each => each.partId), body: said, vapour: { exhaust: 'running', flamesOff: true, nobodyElse: true },

@@ -51,7 +51,7 @@ export function pieceHistory(db: Database, studioId: number, folded: FoldedPiece
       // Taking back repeats the act it takes back, so that one is not a second reading of it.
       was: chain.slice(0, last.voided ? -2 : -1).map(row => ({ doneAt: here(row).length > 0 ? doneAt(row) : row.doneAt, toldAt: row.toldAt, by: nameOf(row), here: here(row).length > 0, detail: details(row) })),
       forecast: forecasts.get(first.id) ?? null, answered: answers.get(first.id) ?? null,
-      mayCorrect: inForce && last.kind in actBodies && last.doneAt >= now - correctionReach && (may(reader.role, 'correct acts of others') || last.memberId === reader.id),
+      mayCorrect: inForce && (last.kind in actBodies || (last.kind === 'batch started' && last.doneAt <= now)) && last.doneAt >= now - correctionReach && (may(reader.role, 'correct acts of others') || last.memberId === reader.id),
     }]
   }).sort((a, b) => b.doneAt - a.doneAt || b.rootId - a.rootId)
 }

@@ -1,12 +1,13 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { face, part, pieceStep, stepTarget } from '~~/db/schema'
+import { act, batch, face, part, pieceStep, stepTarget } from '~~/db/schema'
 import { recordAct } from '~~/server/services/acts'
 import { correctAct } from '~~/server/services/corrections'
 import { startBatch } from '~~/server/services/batches'
 import { pieceStates } from '~~/server/services/piece-states'
 import type { ActRequest } from '#shared/schemas/act'
 import type { Role } from '#shared/terms'
+import { actRefusals } from '#shared/words/acts'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 const now = Date.parse('2026-04-07T10:00:00Z')
@@ -76,6 +77,24 @@ describe('a correction', () => {
     expect(after?.coatId).toBe(before?.coatId)
     expect(after?.endedAt).toBe(now - 70 * minute)
     expect(after?.milestones[0]?.likelyAt).toBeLessThan(before?.milestones[0]?.likelyAt ?? 0)
+  })
+
+  it('does not put a coat before the start of its batch, until the start is corrected', () => {
+    const studio = withBatch(1)
+    const as = { member: studio.members.maker }
+    const told = tell(studio, 'coat on', studio.pieceIds, { step: 'lid-1' }, now - 10 * minute)
+    const start = studio.db.select().from(act).where(eq(act.kind, 'batch started')).get()
+    if (!told.ok || !start) throw new Error('Nothing was started.')
+    const early = { doneAt: iso(now - 3 * hour) }
+    expect(correctAct(studio.db, studio.studioId, as, told.actId, { clientKey: 'too-early', ...early }, now)).toMatchObject({ ok: false, fields: { doneAt: actRefusals.beforeBatch('Box 1', '8:00') } })
+    expect(correctAct(studio.db, studio.studioId, as, told.actId, { clientKey: 'alone-too-early', times: [{ pieceId: studio.pieceIds[0] ?? 0, ...early }] }, now)).toMatchObject({ ok: false, fields: { doneAt: actRefusals.beforeBatch('Box 1', '8:00') } })
+    expect(correctAct(studio.db, studio.studioId, as, start.id, { clientKey: 'too-late', doneAt: iso(now - 5 * minute) }, now)).toMatchObject({ ok: false, fields: { doneAt: actRefusals.startsAfter('Box 1', '9:50') } })
+    expect(correctAct(studio.db, studio.studioId, as, start.id, { clientKey: 'no-start', takeBack: true }, now)).toMatchObject({ ok: false, message: actRefusals.startStays })
+    expect(correctAct(studio.db, studio.studioId, as, start.id, { clientKey: 'began-earlier', doneAt: iso(now - 4 * hour) }, now)).toMatchObject({ ok: true })
+    expect(studio.db.select().from(batch).get()?.startsAt).toBe(now - 4 * hour)
+    expect(correctAct(studio.db, studio.studioId, as, told.actId, { clientKey: 'early-now', ...early }, now)).toMatchObject({ ok: true })
+    const [box] = pieceStates(studio.db, studio.studioId, studio.pieceIds)
+    expect([box?.batch.name, ...new Set(box?.groups.map(group => group.placeId))]).toEqual(['Boxes', studio.places.shelf])
   })
 
   it('puts an unplanned coat, its step and its film on the faces it names', () => {
