@@ -235,6 +235,21 @@ describe('where a tag leads', () => {
   }, 120_000)
 })
 
+describe('the handling sheet on paper', () => {
+  it.each(['A4', 'Letter'] as const)('breaks no word and leaves the screen’s keys away, on %s', async (format) => {
+    const placeId = tagOf('Shelf B').id
+    await made('/api/batches', { clientKey: `almanacs-${format}`, name: `Almanacs ${format}`, scheduleId: null, pieces: [1, 2].map(no => `Almanac ${no}`), placeId, order: null, startsAt: new Date(Date.now() - 60_000).toISOString() })
+    await made('/api/rooms', { name: `Store ${format}`, heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 9 })
+    const { page } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
+    await visit(page, '/sheet')
+    await page.getByRole('button', { name: 'Rooms' }).waitFor()
+    const pages = await readPdf(await page.pdf({ format, printBackground: true }))
+    const says = pages.flatMap(each => each.texts.map(text => text.says))
+    expect(says.some(text => text.includes('Almanacs'))).toBe(true)
+    expect(says.some(text => text.includes('Rooms'))).toBe(false)
+  }, 120_000)
+})
+
 describe('carriers in the settings', () => {
   it('are added, renamed and taken away, and stay while something stands on them', async () => {
     const { page } = await openPage(browser, server.origin, {}, owner)
