@@ -23,7 +23,7 @@ describe('the doors', () => {
     const { page, problems } = await openPage(browser, server.origin)
     await visit(page, '/sign-in')
     expect(await axeProblems(page)).toEqual([])
-    await page.getByRole('link', { name: 'make one' }).click()
+    await page.getByRole('link', { name: 'Make the first studio' }).click()
     await page.getByLabel('Name of the studio').fill('Fir Lane')
     await page.getByLabel('Your name').fill('Wren')
     await page.getByLabel('E-mail address').fill('wren')

@@ -155,6 +155,18 @@ describe('starting a batch', () => {
     expect(await page.getByLabel('Name of the batch').inputValue()).toBe('')
   })
 
+  it('without a schedule leads to where what is put on is told', async () => {
+    const { page, problems } = await openPage(browser, server.origin, {}, owner)
+    await visit(page, '/start')
+    await page.getByRole('radio', { name: /^No schedule: just these pieces/ }).check()
+    await page.getByLabel('Name of the batch').fill('Loose leaves')
+    await page.getByLabel('Where they stand at first').selectOption({ index: 1 })
+    await page.getByRole('button', { name: 'Start the batch' }).click()
+    await page.waitForURL(url => url.pathname === '/put-on')
+    await page.getByText('Loose leaves has started: one piece. Tell here what is put on.').waitFor()
+    expect(problems).toEqual([])
+  })
+
   it('says by each field what it wants, and asks nobody before that', async () => {
     const { page } = await openPage(browser, server.origin, {}, owner)
     await visit(page, '/start')
