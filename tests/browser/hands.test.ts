@@ -25,12 +25,12 @@ const made = async (who: Visitor, path: string, body: unknown) => {
 const piecesOf = async (prefix: string) => (await maker.get<StateWire>('/api/state')).body.pieces.filter(piece => piece.name.startsWith(prefix))
 const filmsOf = (pieces: StateWire['pieces']) => pieces.flatMap(piece => piece.groups.flatMap(group => group.films))
 
-/** Starts a batch of so many pieces that wait for their first paint. */
-async function startBatch(name: string, count: number, scheduled = true) {
+/** Starts a batch of so many pieces that wait for their first paint, so many hours ago. */
+async function startBatch(name: string, count: number, scheduled = true, hoursAgo = 6) {
   const file = new Database(server.databaseFile, { readonly: true })
   const schedule = file.prepare('select id from finishing_schedule where library_key = ?').get('painted-waxed-box') as { id: number }
   file.close()
-  const startsAt = new Date(Date.now() - 6 * 60 * minute).toISOString()
+  const startsAt = new Date(Date.now() - hoursAgo * 60 * minute).toISOString()
   await made(maker, '/api/batches', { clientKey: `batch-of-test-${++keys}`, name: `${name} batch`, scheduleId: scheduled ? schedule.id : null, pieces: Array.from({ length: count }, (_, i) => `${name} ${i + 1}`), placeId: shelfId, order: null, startsAt })
 }
 
@@ -118,7 +118,7 @@ describe('a maker\'s thumb on a phone', () => {
   })
 
   it('says that a coat is still tacky in two taps, and the time moves', async () => {
-    await startBatch('Frame', 1)
+    await startBatch('Frame', 1, true, 48)
     const [piece] = await piecesOf('Frame')
     if (!piece) throw new Error('The batch has no piece.')
     const { actId } = await made(maker, '/api/acts', { clientKey: 'coat-of-frame-1', kind: 'coat on', doneAt: new Date(Date.now() - 60 * minute).toISOString(), pieces: [{ id: piece.id, version: piece.version }], body: { step: 'lid-1' } })
