@@ -14,15 +14,16 @@ const toDo = ({ turns }: StepWork) => turns.filter(turn => turn.kind === 'work' 
  * single piece, its minutes are the schedule's, which know of it.
  * @param likeWork a key that has in common what is done in one go: a first coat is not mixed with the last
  */
-export function withMixing(works: readonly StepWork[], toCome: WaitsToCome, likeWork: (work: StepWork) => string): StepWork[] {
+export function withMixing(works: readonly StepWork[], toCome: Pick<WaitsToCome, 'pot'>, likeWork: (work: StepWork) => string): StepWork[] {
   const more = new Map<StepWork, number>()
   for (const alike of grouped(works, likeWork).values()) {
-    const turns = alike.flatMap(toDo)
-    const [first] = alike
-    const pot = first && turns.length > 1 ? toCome.pot(first.step, first.roomId) : null
-    const each = pot && piecesOfMix(pot, Math.max(...turns.map(turn => turn.minutes)))
-    if (!each || each >= turns.length) continue
-    for (const work of alike) more.set(work, Math.round(mixAgainMin / each))
+    // Coats of one piece lie hours apart: each is mixed for with the coats of others, not with the next of its own.
+    const waiting = alike.filter(work => toDo(work).length > 0)
+    const [first] = waiting
+    const pot = first && waiting.length > 1 ? toCome.pot(first.step, first.roomId) : null
+    const each = pot && piecesOfMix(pot, Math.max(...waiting.flatMap(toDo).map(turn => turn.minutes)))
+    if (!each || each >= waiting.length) continue
+    for (const work of waiting) more.set(work, Math.round(mixAgainMin / each))
   }
   return works.map((work) => {
     const added = more.get(work) ?? 0

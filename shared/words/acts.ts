@@ -21,9 +21,9 @@ export const actRefusals = {
   notInPiece: 'One of these parts is not part of the pieces named.',
   notTold: 'Nobody told this: it was noted by itself, and changes with what it followed from.',
   beforeBatch: (piece: string, start: string) => `The batch of ${piece} began ${start}. Give a time from then on. If it began earlier, correct the entry of its start first.`,
-  startsAfter: (piece: string, first: string) => `Something was done on ${piece} at ${first} already. The batch began by then.`,
+  startsAfter: (piece: string, first: string) => `Something was done on ${piece} by ${first} already. The batch began by then.`,
   startStays: 'A start is not taken back. Cancel the batch, or say what became of its pieces.',
   startTimeOnly: 'Of the start of a batch only the time can be corrected.',
   cancelledBefore: 'This was cancelled already: nothing is left of it to cancel.',
-  nothingToCancel: 'Every step is done: nothing is left to cancel.',
+  nothingToCancel: 'No step of these is still to be done: nothing is left to cancel.',
 } as const

@@ -61,6 +61,9 @@ describe('a start and a date', () => {
     const tomorrow = new Date(Date.now() + 86_400_000).toISOString().slice(0, 10)
     await day.fill(tomorrow)
     await page.getByRole('status').filter({ hasText: /(ways? ends?) by then\. Likely: .+, nine of ten by: / }).waitFor()
+    // The picture is of that day then: its flag stands before every column that the day does not keep.
+    const chosen = new Intl.DateTimeFormat('en-GB', { timeZone: 'UTC', day: 'numeric', month: 'short' }).format(new Date(tomorrow))
+    await page.locator('figure text').filter({ hasText: new RegExp(`promise \\w+ ${chosen}$`, 'i') }).waitFor()
     expect(await axeProblems(page)).toEqual([])
     await day.fill('')
     await page.getByRole('button', { name: 'Promise a day' }).click()

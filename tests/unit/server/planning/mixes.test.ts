@@ -1,6 +1,8 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
 import { pieceStep, plan, planEntry, turn } from '~~/db/schema'
+import type { StepWork } from '~~/server/planning/lags'
+import { withMixing } from '~~/server/planning/mixes'
 import { readPlanFacts } from '~~/server/planning/facts'
 import { studioProblem } from '~~/server/planning/problem'
 import { replan } from '~~/server/planning/replan'
@@ -43,6 +45,15 @@ describe('what goes off in its pot', () => {
     // At 12 °C a pot lasts 18 minutes and more: enough for three trays, not for four. Five minutes over three trays are two each.
     expect(planned(trays(3, 12))).toEqual([6, 6, 6])
     expect(planned(trays(4, 12))).toEqual([8, 8, 8, 8])
+  })
+
+  it('is not mixed in one go for the coats of one piece, which lie hours apart', () => {
+    const coats = (stepId: number) => Array.from({ length: 3 }, (_, at) => ({ id: stepId * 10 + at, kind: 'work', status: 'waiting', minutes: 6 }))
+    const work = (id: number) => ({ step: { id, pieceId: id }, turns: coats(id), roomId: null }) as unknown as StepWork
+    const pot = () => ({ minutes: 10, least: 9, sheetMinutes: 10, tempC: null })
+    const minutes = (works: StepWork[]) => withMixing(works, { pot }, () => 'alike').map(each => each.turns.map(turn => turn.minutes))
+    expect(minutes([work(1)])).toEqual([[6, 6, 6]])
+    expect(minutes([work(1), work(2)])).toEqual([[11, 11, 11], [11, 11, 11]])
   })
 
   it('leaves a tray alone that no pot is enough for: its own minutes know of that', () => {
