@@ -31,7 +31,7 @@ export const entry = {
   signedInAs: (name: string, email: string) => `You are signed in as ${name}, ${email}.`,
   joinForOther: (email: string) => `This invitation is for ${email}. Sign out, then go on as ${email}.`,
   joinMember: (studio: string) => `You belong to ${studio} already: there is nothing to join.`,
-  joinAsOther: 'Sign out and go on as somebody else',
+  joinAsOther: 'Sign out, go on as somebody else',
   joinKnown: 'Signing in here already?',
   joinSignIn: 'Sign in first, then come back to this invitation',
   notFound: 'There is nothing at this address.',
