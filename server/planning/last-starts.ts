@@ -3,7 +3,7 @@ import type { StudioProblem } from '~~/server/planning/problem'
 import { handsOf } from '~~/server/planning/hands'
 import { minutesFrom } from '#shared/drying/waits'
 import { lastStart } from '#shared/planning/lastStart'
-import type { LastStart, LastStartCase } from '#shared/planning/lastStart'
+import type { LastStart } from '#shared/planning/lastStart'
 import type { Interval, Plan } from '#shared/planning/types'
 import { studioZone } from '#shared/time'
 
@@ -16,13 +16,12 @@ export interface LastStarts { lastStart: number | null, firstFew: number | null,
 
 /**
  * Counted back, for each turn whose window after a film that lies already will shut, over all turns of its session: from
- * the early end of the windows by set-up and minutes per piece with mixing anew, inside somebody's hours.
+ * the early end of the windows by set-up and minutes per piece, inside somebody's hours.
  * @param nowMinute now, counted from the problem's zero
  */
 export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts, nowMinute: number): Map<string, LastStarts> {
   const shuts = shutsOf(given, facts)
   const works = new Map<string, StudioProblem['works'][number]>(given.works.flatMap(work => work.turns.map(turn => [`t${turn.id}`, work] as const)))
-  const minutes = new Map(given.problem.activities.map(each => [each.id, each.minutes]))
   const open = hoursOfAnybody(given, facts, Math.max(0, ...[...shuts.values()].map(each => each.shuts)))
   const groups = new Map<string, string[]>()
   for (const entry of plan.entries) {
@@ -34,9 +33,8 @@ export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts,
   for (const members of groups.values()) {
     const step = works.get(members[0] ?? '')?.step
     if (!step) continue
-    const session = { setup: step.setupMin, minutes: Math.max(...members.map(id => minutes.get(id) ?? 0)), now: nowMinute, open }
     const windows = members.flatMap(id => shuts.get(id) ?? [])
-    const { all, firstFew } = forSome(windows, windows.length, session)
+    const { all, firstFew } = forSome(windows, windows.length, step, nowMinute, open)
     for (const id of members) found.set(id, { lastStart: all, firstFew: firstFew?.count ?? null, lastStartFew: firstFew?.minute ?? null })
   }
   return found
@@ -46,12 +44,12 @@ export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts,
 const share = 3
 
 /** The last moment for all, and for some of them: as many as can still be done, or a third while all can. Those are the ones whose windows shut last. */
-function forSome(windows: readonly LastWindow[], count: number, session: Omit<LastStartCase, 'shuts' | 'opens'>): LastStart {
+function forSome(windows: readonly LastWindow[], count: number, step: StudioProblem['works'][number]['step'], now: number, open: readonly Interval[]): LastStart {
   const chosen = [...windows].sort((a, b) => b.shuts - a.shuts).slice(0, count)
-  const found = lastStart({ shuts: chosen.map(each => each.shuts), opens: chosen.map(each => each.opens), ...session })
+  const found = lastStart({ shuts: chosen.map(each => each.shuts), opens: chosen.map(each => each.opens), setup: step.setupMin, minutes: step.pieceMin, now, open })
   const few = Math.ceil(count / share)
   if (count < windows.length || found.all === null || found.firstFew !== null || few === count) return found
-  const { all } = forSome(windows, few, session)
+  const { all } = forSome(windows, few, step, now, open)
   return all !== null && all > found.all ? { all: found.all, firstFew: { count: few, minute: all } } : found
 }
 

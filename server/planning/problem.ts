@@ -5,7 +5,6 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { activityId, lagsOf } from '~~/server/planning/lags'
 import type { LagFilm, LagInput, StepWork } from '~~/server/planning/lags'
 import { dustApart, dustKeptOff } from '~~/server/planning/dust'
-import { withMixing } from '~~/server/planning/mixes'
 import { openWithout, reservedFor } from '~~/server/planning/reserved'
 import { keptOut, operatorOf, refusedWork, vapourApart } from '~~/server/planning/vapour'
 import type { WaitsToCome } from '~~/server/planning/waits'
@@ -36,7 +35,7 @@ export interface StudioProblem { problem: PlanProblem, zeroAt: number, works: St
 export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number): StudioProblem {
   const zeroAt = zeroOf(now)
   const hands = handsOf(facts, studioZone(facts.owner.zone), zeroAt, zeroAt + horizonDays * 24 * 60 * 60_000)
-  const works = withMixing(worksOf(facts), toCome, work => `${familyOf(work)} | ${work.step.name}`)
+  const works = worksOf(facts)
   const index = indexOf(facts)
   const found = byPiece(works).map(own => lagsOf(own, facts, index, toCome, zeroAt))
   const lags = [...found.flatMap(each => each.lags), ...keptOut(works, facts, toCome.shut, hands, zeroAt), ...dustKeptOff(works, facts, zeroAt)]

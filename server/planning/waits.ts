@@ -1,8 +1,6 @@
 import { airOf, roomAirs } from '~~/server/work/air'
 import { benchesOf } from '~~/server/work/benches'
 import { dryingMaterials, preparedMaterials } from '~~/server/work/materials'
-import { potsOf } from '~~/server/work/pots'
-import type { Pot } from '~~/server/work/pots'
 import { materialsToCome } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { readShut } from '~~/server/planning/vapour'
@@ -38,7 +36,6 @@ export class WaitsToCome {
   readonly #films = new Map<string, FilmToCome | null>()
   readonly #clockOf: (roomId: number | null) => RoomClock
   readonly #airs: Map<number, RoomAir>
-  readonly #potOf: ReturnType<typeof potsOf>
   /** Rooms that nobody enters till somebody opens them. */
   readonly shut: ReadonlyMap<number, ShutRoom>
 
@@ -46,7 +43,6 @@ export class WaitsToCome {
     this.#benches = benchesOf(db, facts.owner.id, dryingMaterials(db, facts.owner.id, materialsToCome(facts)))
     const airs = roomAirs(db, facts.owner, now)
     this.#airs = airs
-    this.#potOf = potsOf(db, facts.owner, materialsToCome(facts), airs)
     this.shut = readShut(db, facts.owner.id, now)
     this.#clockOf = roomId => roomClock((roomId === null ? undefined : airs.get(roomId)) ?? airOf(facts.owner), now, preparedMaterials.tools)
   }
@@ -67,11 +63,6 @@ export class WaitsToCome {
     const track = trackRoom(preparedMaterials.tools, air, this.now)
     const hours = Math.max(0, Math.min(7 * 24, Math.ceil((untilAt - this.now) / (60 * minute))))
     return Math.min(...Array.from({ length: hours + 1 }, (_, ahead) => airAt(track, this.now + ahead * 60 * minute).tempC))
-  }
-
-  /** How long what is mixed now for this step lasts in a room; null where nothing goes off in its pot. */
-  pot(step: PlanFacts['steps'][number], roomId: number | null): Pot | null {
-    return this.#potOf(step.materialVersionId, roomId, this.now)
   }
 
   /** The film that a coat of this step would leave were it put on now, by a material as this bench has it; null where nothing dries. */
