@@ -143,7 +143,7 @@ describe('the form for parts', () => {
       await route.continue()
     })
     await key(page, 'Start the batch').click()
-    await page.waitForURL(url => url.pathname === '/hands')
+    await page.waitForURL(url => url.pathname === '/put-on')
     expect(emptied).toEqual([])
     expect(rows<{ name: string }>('select part.name from part join piece on piece.id = part.piece_id where piece.name = \'Pine dresser\' order by part.id').map(row => row.name)).toEqual(['Carcase', 'Deep drawer 1', 'Deep drawer 2', 'Deep drawer 3', 'Deep drawer 4', 'Door 1', 'Door 2', 'Top', 'Plinth'])
     await page.context().close()
