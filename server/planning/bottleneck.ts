@@ -40,7 +40,7 @@ function studioOpen(facts: PlanFacts, zeroAt: number, horizon: number): readonly
  * studio as it is had. The best first: fewer windows missed, then less lateness, then the sum of finishes.
  * @param now ms UTC
  */
-export async function bottleneckOf(base: Base, now: number, ask: Ask): Promise<Omit<BottleneckState, 'planMadeAt' | 'seen'>> {
+export async function bottleneckOf(base: Base, now: number, ask: Ask): Promise<Omit<BottleneckState, 'reckonedAt' | 'seen'>> {
   const { facts, given } = base.changed
   const { problem, zeroAt } = given
   const dates = Array.from({ length: daysShown }, (_, ahead) => addDays(localDate(now, studioZone(facts.owner.zone)), ahead))

@@ -12,27 +12,28 @@ import { grouped } from '#shared/grouped'
 import type { BottleneckState, WhatIf, WhatIfAnswer } from '#shared/schemas/what-if'
 import { whatIfWords } from '#shared/words/what-if'
 
-interface Kept { planId: number, base: Promise<Base | Refusal>, bottleneck: Promise<BottleneckState | Refusal> | null }
+/** `askedAt` (ms UTC): the moment all of it is reckoned from, so that what is compared begins at the same time. */
+interface Kept { planId: number, askedAt: number, base: Promise<Base | Refusal>, bottleneck: Promise<BottleneckState | Refusal> | null }
 
 /** What was worked out about the plan in force, by studio: a new plan puts it away. */
 export type KeptBases = Map<number, Kept>
 
-function keptFor(db: Database, studioId: number, now: number, ask: Ask, bases: KeptBases): { current: typeof plan.$inferSelect, kept: Kept } | Refusal {
-  const current = db.select().from(plan).where(scoped(plan, studioId, sql`${plan.current} = 1`)).get()
+function keptFor(db: Database, studioId: number, now: number, ask: Ask, bases: KeptBases): Kept | Refusal {
+  const current = db.select({ id: plan.id }).from(plan).where(scoped(plan, studioId, sql`${plan.current} = 1`)).get()
   if (!current) return impossible(whatIfWords.nothingPlanned)
   const known = bases.get(studioId)
-  if (known?.planId === current.id) return { current, kept: known }
-  const fresh: Kept = { planId: current.id, base: baseOf(db, studioId, now, ask), bottleneck: null }
+  if (known?.planId === current.id) return known
+  const fresh: Kept = { planId: current.id, askedAt: now, base: baseOf(db, studioId, now, ask), bottleneck: null }
   bases.set(studioId, fresh)
-  return { current, kept: fresh }
+  return fresh
 }
 
 /** What holds the plan in force back. Worked out once for each plan, on demand. `now` in ms UTC. */
 export async function bottleneck(db: Database, studioId: number, now: number, ask: Ask, bases: KeptBases = new Map()): Promise<BottleneckState | Refusal> {
   const found = keptFor(db, studioId, now, ask, bases)
-  if (isRefusal(found)) return { planMadeAt: null, anew: null, days: [], waited: [], more: [], seen: [] }
-  found.kept.bottleneck ??= found.kept.base.then(async base => isRefusal(base) ? base : { ...await bottleneckOf(base, now, ask), planMadeAt: found.current.madeAt, seen: seenPlaces(db, studioId) })
-  const answer = await found.kept.bottleneck
+  if (isRefusal(found)) return { reckonedAt: null, anew: null, days: [], waited: [], more: [], seen: [] }
+  found.bottleneck ??= found.base.then(async base => isRefusal(base) ? base : { ...await bottleneckOf(base, found.askedAt, ask), reckonedAt: found.askedAt, seen: seenPlaces(db, studioId) })
+  const answer = await found.bottleneck
   // What did not come to an end is asked again.
   if (isRefusal(answer)) bases.delete(studioId)
   return answer
@@ -40,11 +41,14 @@ export async function bottleneck(db: Database, studioId: number, now: number, as
 
 /** The difference one change makes to the plan in force, on a copy. `now` in ms UTC. */
 export async function askWhatIf(db: Database, studioId: number, change: WhatIf, now: number, ask: Ask, bases: KeptBases = new Map()): Promise<WhatIfAnswer | Refusal> {
-  const changed = changedProblem(db, studioId, change, now)
-  if (isRefusal(changed)) return changed
+  // What forbids it may have come since the plan without it was reckoned.
+  const asNow = changedProblem(db, studioId, change, now)
+  if (isRefusal(asNow)) return asNow
   const found = keptFor(db, studioId, now, ask, bases)
   if (isRefusal(found)) return found
-  const base = await found.kept.base
+  const changed = found.askedAt === now ? asNow : changedProblem(db, studioId, change, found.askedAt)
+  if (isRefusal(changed)) return changed
+  const base = await found.base
   if (isRefusal(base)) {
     bases.delete(studioId)
     return base

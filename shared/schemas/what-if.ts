@@ -38,6 +38,6 @@ export interface Anew { moves: number, difference: Difference }
 
 /**
  * GET /api/plan/bottleneck: what pieces wait for, day by day, what one more of each would buy, the best first, and what a plan
- * made anew would; `anew` null where that is not worth the moves.
+ * made anew would; `anew` null where that is not worth the moves. `reckonedAt` (ms UTC): as the studio stood when; null without a plan.
  */
-export interface BottleneckState { planMadeAt: number | null, anew: Anew | null, days: string[], waited: { for: 'hands' | 'hours' | 'other' | PlaceKind, minutes: number[] }[], more: OneMore[], seen: { kind: PlaceKind, places: number, oldestAt: number | null }[] }
+export interface BottleneckState { reckonedAt: number | null, anew: Anew | null, days: string[], waited: { for: 'hands' | 'hours' | 'other' | PlaceKind, minutes: number[] }[], more: OneMore[], seen: { kind: PlaceKind, places: number, oldestAt: number | null }[] }

@@ -104,13 +104,13 @@ export function gainsText(difference: Difference): string {
 
 const aWeek = 7 * 86_400_000
 
-/** How old what the sentence rests on is: the plan, and when the places it names were last looked at. */
+/** How old what the sentence rests on is: the studio it was reckoned from, and when the places it names were last looked at. */
 export function bottleneckEvidence(state: BottleneckState, now: number): string[] {
-  if (state.planMadeAt === null) return []
+  if (state.reckonedAt === null) return []
   const first = state.more.find(each => isWorth(each.difference))
   const seen = first?.kind == null ? null : state.seen.find(each => each.kind === first.kind) ?? null
   return [
-    `Reckoned on the plan made ${ago(state.planMadeAt, now)}, by planning a copy with one more of each.`,
+    `Reckoned from the studio as it stood ${ago(state.reckonedAt, now)}, by planning copies with one more of each.`,
     ...seen?.oldestAt != null ? [now - seen.oldestAt > aWeek ? `Nobody has walked round all ${placeKindsText(seen.kind).toLowerCase()} for ${longSpan((now - seen.oldestAt) / 60_000)}: look first whether they are as full as it says here.` : `What stands there was last looked at ${ago(seen.oldestAt, now)} or later.`] : [],
   ]
 }

@@ -5,6 +5,8 @@ import { atOnce, replan } from '~~/server/planning/replan'
 import { searchHere } from '~~/server/planning/search'
 import { planState } from '~~/server/services/plan-state'
 import { checkPin, pinTurns, unpin } from '~~/server/services/pins'
+import { studioZone } from '#shared/time'
+import { pinWords } from '#shared/words/pins'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
 
@@ -87,6 +89,12 @@ describe('pinning', () => {
     expect(others.filter(entry => entry.startsAt < at + 27 * minute && entry.endsAt > at - 20 * minute)).toEqual([])
     // Gluing at 10:45 would be in the middle of the set-up.
     expect(await pinAt(studio, turnsOf(studio, 'glue-box').slice(0, 1), at - 15 * minute, studio.members.maker.id)).toMatchObject({ message: 'The maker has “First paint on the lid top” then, which stays where it is.' })
+  })
+
+  it('says of a window that shut by now that it shut, and of one to come that it shuts', () => {
+    const clock = { now, zone: studioZone('UTC') }
+    expect(pinWords.windowShut('Second coat', now - hour, clock)).toBe('The window for “Second coat” shut 9:00. It wants its recovery first.')
+    expect(pinWords.windowShut('Second coat', now + hour, clock)).toBe('The window for “Second coat” shuts 11:00. Later it wants its recovery.')
   })
 
   it('is absent for a turn of another studio', async () => {

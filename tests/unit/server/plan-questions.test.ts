@@ -8,10 +8,11 @@ import type { Ask } from '~~/server/planning/questions'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { solve } from '~~/server/planner/solve'
 import { askWhatIf, bottleneck } from '~~/server/services/plan-questions'
+import type { KeptBases } from '~~/server/services/plan-questions'
 import { isRefusal } from '~~/server/utils/errors'
 import { standardWeights } from '#shared/planning/types'
 import { anewText } from '#shared/words/plan-anew'
-import { bottleneckSentence, differenceText } from '#shared/words/what-if'
+import { bottleneckEvidence, bottleneckSentence, differenceText } from '#shared/words/what-if'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
 
@@ -60,6 +61,19 @@ describe('the bottleneck', () => {
 })
 
 describe('what if', () => {
+  it('is measured from the moment that the plan without it was reckoned from, and the age of the evidence counts from there', async () => {
+    const { db, studioId } = await oneBench()
+    const kept: KeptBases = new Map()
+    // Fourteen minutes on, the next start that can be given is 10:15; two minutes later it is 10:30.
+    const asked = now + 14 * minute
+    const state = await bottleneck(db, studioId, asked, ask, kept)
+    if (isRefusal(state)) throw new Error(state.message)
+    expect(bottleneckEvidence(state, asked + 2 * minute)[0]).toBe('Reckoned from the studio as it stood 2 min ago, by planning copies with one more of each.')
+    const change = { kind: 'places', placeKind: 'bench', more: 1 } as const
+    const soon = await askWhatIf(db, studioId, change, asked, ask, kept)
+    expect(soon).toMatchObject({ ok: true })
+    expect(await askWhatIf(db, studioId, change, asked + 2 * minute, ask, kept)).toEqual(soon)
+  })
   it('keeps nothing of what it tries', async () => {
     const { db, studioId, rooms } = await oneBench()
     const all = () => JSON.stringify([db.select().from(studioTable).all(), db.select().from(place).all(), db.select().from(openHours).all(), db.select().from(reading).all(), db.select().from(order).all(), db.select().from(planEntry).all()])
