@@ -1,4 +1,4 @@
-import type { HoursWire } from '#shared/schemas/hours'
+import type { HoursWire, Stretch } from '#shared/schemas/hours'
 import type { WhatIf, WhatIfAnswer, WhatIfKind } from '#shared/schemas/what-if'
 import { fromWire } from '#shared/schemas/wire'
 import type { Wire } from '#shared/schemas/wire'
@@ -8,6 +8,8 @@ import { fromLocal } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { Units } from '#shared/units'
 import { toCelsius } from '#shared/units'
+
+const weekendFirst = [6, 7, 1, 2, 3, 4, 5] as const
 
 interface Rooms { id: number, name: string }
 
@@ -48,7 +50,23 @@ export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () =
   const answer = shallowRef<WhatIfAnswer | null>(null)
   const asked = shallowRef<WhatIf | null>(null)
 
+  const hours = shallowRef<HoursWire | null>(null)
+  /** What stood before hours were kept, to be put back. */
+  const before = shallowRef<{ memberId: number | null, hours: Stretch[] } | null>(null)
+  const keptOf = (memberId: number | null) => memberId === null ? hours.value?.studio : hours.value?.members.find(each => each.memberId === memberId)?.hours ?? hours.value?.studio
+  /** The hours that stand now on the day being tried; null where they are not known or none is tried. */
+  const standing = computed(() => {
+    const own = wish.kind === 'open day' ? keptOf(null) : wish.kind === 'hours of' && wish.memberId !== null ? keptOf(wish.memberId) : undefined
+    return own?.filter(each => each.weekday === wish.weekday) ?? null
+  })
+  const readHours = async () => {
+    hours.value = await callApi<HoursWire>('/api/hours').catch(() => hours.value)
+  }
+
   async function open() {
+    await readHours()
+    // The first day without hours, weekends before others: an open day tried by mistake would be made shorter.
+    if (wish.weekday === firstWish('metric').weekday) wish.weekday = weekendFirst.find(day => hours.value && !hours.value.studio.some(each => each.weekday === day)) ?? wish.weekday
     if (rooms.value.length === 0) rooms.value = await callApi<Rooms[]>('/api/rooms').catch(() => [])
   }
   async function ask() {
@@ -67,13 +85,24 @@ export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () =
     const memberId = tried.kind === 'hours of' ? tried.memberId : null
     const done = await send(async () => {
       const known = await callApi<HoursWire>('/api/hours')
-      const own = memberId === null ? known.studio : known.members.find(each => each.memberId === memberId)?.hours ?? known.studio
-      const kept = [...own.filter(each => each.weekday !== tried.weekday), { weekday: tried.weekday, fromMin: tried.fromMin, toMin: tried.toMin }]
-      return callApi('/api/hours', { method: 'PUT', body: { memberId, hours: kept } })
+      const had = memberId === null ? known.studio : known.members.find(each => each.memberId === memberId)?.hours ?? null
+      const kept = [...(had ?? known.studio).filter(each => each.weekday !== tried.weekday), { weekday: tried.weekday, fromMin: tried.fromMin, toMin: tried.toMin }]
+      await callApi('/api/hours', { method: 'PUT', body: { memberId, hours: kept } })
+      before.value = { memberId, hours: had ?? [] }
+      return true
     })
     if (done !== null) answer.value = null
+    await readHours()
+    return done !== null
+  }
+
+  /** Puts back what stood before the hours were kept; true when it stands again. */
+  async function putBack(): Promise<boolean> {
+    const done = await send(() => callApi('/api/hours', { method: 'PUT', body: before.value }))
+    if (done !== null) before.value = null
+    await readHours()
     return done !== null
   }
   watch(wish, () => { answer.value = null })
-  return { wish, rooms, answer, asked, busy, message, fields, keeping, refused, open, ask, keep }
+  return { wish, rooms, standing, before, answer, asked, busy, message, fields, keeping, refused, open, ask, keep, putBack }
 }

@@ -1,22 +1,22 @@
 import * as z from 'zod/mini'
-import { instant } from '#shared/schemas/act'
-import { rowId } from '#shared/schemas/common'
 import { placeKinds } from '#shared/terms'
 import type { PlaceKind } from '#shared/terms'
 import { fields } from '#shared/words/fields'
 
 const minuteOfDay = z.int(fields.hours).check(z.gte(0, fields.hours), z.lte(1440, fields.hours))
 const weekday = z.int(fields.weekday).check(z.gte(1, fields.weekday), z.lte(7, fields.weekday))
+/** A row that is chosen by name: nothing chosen is said in those words. */
+const chosen = (sentence: string) => z.int(sentence).check(z.positive(sentence))
 const hours = { weekday, fromMin: minuteOfDay, toMin: minuteOfDay }
 
 /** POST /api/plan/what-if: one change, tried on a copy. */
 export const whatIfBody = z.discriminatedUnion('kind', [
   z.strictObject({ kind: z.literal('places'), placeKind: z.enum(placeKinds, fields.whatIf), more: z.int(fields.whatIfMore).check(z.gte(1, fields.whatIfMore), z.lte(40, fields.whatIfMore)) }),
-  z.strictObject({ kind: z.literal('humidity'), roomId: rowId, rh: z.number(fields.whatIfRh).check(z.gte(0.2, fields.whatIfRh), z.lte(0.9, fields.whatIfRh)) }),
-  z.strictObject({ kind: z.literal('heat'), roomId: rowId, tempC: z.number(fields.whatIfTemp).check(z.gte(5, fields.whatIfTemp), z.lte(35, fields.whatIfTemp)) }),
+  z.strictObject({ kind: z.literal('humidity'), roomId: chosen(fields.whatIfRoom), rh: z.number(fields.whatIfRh).check(z.gte(0.2, fields.whatIfRh), z.lte(0.9, fields.whatIfRh)) }),
+  z.strictObject({ kind: z.literal('heat'), roomId: chosen(fields.whatIfRoom), tempC: z.number(fields.whatIfTemp).check(z.gte(5, fields.whatIfTemp), z.lte(35, fields.whatIfTemp)) }),
   z.strictObject({ kind: z.literal('open day'), ...hours }).check(z.refine(each => each.fromMin < each.toMin, { error: fields.hoursOrder, path: ['toMin'] })),
-  z.strictObject({ kind: z.literal('hours of'), memberId: rowId, ...hours }).check(z.refine(each => each.fromMin < each.toMin, { error: fields.hoursOrder, path: ['toMin'] })),
-  z.strictObject({ kind: z.literal('due'), batchId: rowId, dueAt: instant }),
+  z.strictObject({ kind: z.literal('hours of'), memberId: chosen(fields.whatIfWho), ...hours }).check(z.refine(each => each.fromMin < each.toMin, { error: fields.hoursOrder, path: ['toMin'] })),
+  z.strictObject({ kind: z.literal('due'), batchId: chosen(fields.whatIfBatch), dueAt: z.iso.datetime(fields.whatIfDue) }),
 ], fields.whatIf)
 export type WhatIf = z.output<typeof whatIfBody>
 export type WhatIfKind = WhatIf['kind']

@@ -1,10 +1,11 @@
 import { gainOf, gainedTimes, isNoticeable, isWorth, lessLate, mostSooner } from '#shared/what-if'
 import type { BatchFare, BottleneckState, Difference, OneMore } from '#shared/schemas/what-if'
 import type { PlaceKind } from '#shared/terms'
-import { ago } from '#shared/time'
+import type { Stretch } from '#shared/schemas/hours'
+import { ago, clockFace } from '#shared/time'
 import { listText } from '#shared/words/group'
 import { longSpan } from '#shared/words/plan-strips'
-import { placeKindsText, weekdayOfDate } from '#shared/words/week'
+import { placeKindsText, weekdayOfDate, weekdayText } from '#shared/words/week'
 
 export const whatIfWords = {
   title: 'What would change it',
@@ -32,7 +33,9 @@ export const whatIfWords = {
   noTime: 'no time',
   same: 'no change',
   apply: 'Keep these hours',
-  applied: 'The hours are kept. The plan is made anew.',
+  applied: 'The hours are kept. The plan follows by itself and moves as little as it must, so look above whether to make it anew.',
+  putBack: 'Put back the hours of before',
+  wentBack: 'The hours of before are back. The plan follows by itself.',
   addPlace: 'If you get them, give them a place in Settings; the plan then counts on them.',
   air: 'Set it in the room and note the air; the plan follows what is read.',
   date: 'Agree it first with whom the order is for; here only the plan was asked.',
@@ -46,6 +49,14 @@ export const whatIfWords = {
   solventLater: (room: string) => `Solvent work is planned in ${room} later. Before it begins, and till its vapour is gone, heaters, dehumidifiers and fans are off there.`,
   solventPlanned: (room: string) => `Solvent work is planned in ${room} within a day. Heaters, dehumidifiers and fans are not tried there: they can light the vapour.`,
 } as const
+
+/** What stands on a weekday now, beside the hours that are to be tried: "Saturday is 8:30 to 17:30 now; what you try takes the place of that." `name` null: the studio's. */
+export function hoursNowText(name: string | null, weekday: number, stretches: readonly Pick<Stretch, 'fromMin' | 'toMin'>[]): string {
+  const day = weekdayText(weekday)
+  if (stretches.length === 0) return name === null ? `The studio is closed on ${day} now.` : `${name} does not work on ${day} now.`
+  const spans = listText([...stretches].sort((a, b) => a.fromMin - b.fromMin).map(({ fromMin, toMin }) => `${clockFace(fromMin)} to ${clockFace(toMin)}`))
+  return `${name === null ? `The studio is open on ${day}` : `${name} works on ${day}`} from ${spans} now; what you try takes the place of that.`
+}
 
 export const bottleneckWords = {
   asking: 'Working out what holds the plan back',
