@@ -1,4 +1,3 @@
-import type { HoursWire, Stretch } from '#shared/schemas/hours'
 import type { WhatIf, WhatIfAnswer, WhatIfKind } from '#shared/schemas/what-if'
 import { fromWire } from '#shared/schemas/wire'
 import type { Wire } from '#shared/schemas/wire'
@@ -8,8 +7,6 @@ import { fromLocal } from '#shared/time'
 import type { Clock } from '#shared/time'
 import type { Units } from '#shared/units'
 import { toCelsius } from '#shared/units'
-
-const weekendFirst = [6, 7, 1, 2, 3, 4, 5] as const
 
 interface Rooms { id: number, name: string }
 
@@ -44,29 +41,19 @@ function changeOf(wish: Wish, week: WeekState, { zone }: Clock, units: Units): W
 /** What is being tried on a copy of the plan: the wish as it is typed, the difference it makes, and keeping it where that means something. */
 export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () => Units) {
   const { busy, message, fields, submit } = useSubmit()
-  const { busy: keeping, message: refused, submit: send } = useSubmit()
+  const hours = useTriedHours()
   const wish = reactive(firstWish(units()))
   const rooms = shallowRef<Rooms[]>([])
   const answer = shallowRef<WhatIfAnswer | null>(null)
   const asked = shallowRef<WhatIf | null>(null)
-
-  const hours = shallowRef<HoursWire | null>(null)
-  /** What stood before hours were kept, to be put back. */
-  const before = shallowRef<{ memberId: number | null, hours: Stretch[] } | null>(null)
-  const keptOf = (memberId: number | null) => memberId === null ? hours.value?.studio : hours.value?.members.find(each => each.memberId === memberId)?.hours ?? hours.value?.studio
   /** The hours that stand now on the day being tried; null where they are not known or none is tried. */
-  const standing = computed(() => {
-    const own = wish.kind === 'open day' ? keptOf(null) : wish.kind === 'hours of' && wish.memberId !== null ? keptOf(wish.memberId) : undefined
-    return own?.filter(each => each.weekday === wish.weekday) ?? null
-  })
-  const readHours = async () => {
-    hours.value = await callApi<HoursWire>('/api/hours').catch(() => hours.value)
-  }
+  const standing = computed(() => wish.kind === 'open day' ? hours.standingOn(null, wish.weekday) : wish.kind === 'hours of' && wish.memberId !== null ? hours.standingOn(wish.memberId, wish.weekday) : null)
 
   async function open() {
-    await readHours()
-    // The first day without hours, weekends before others: an open day tried by mistake would be made shorter.
-    if (wish.weekday === firstWish('metric').weekday) wish.weekday = weekendFirst.find(day => hours.value && !hours.value.studio.some(each => each.weekday === day)) ?? wish.weekday
+    const { weekday } = wish
+    await hours.read()
+    // Not over a day that somebody chose meanwhile.
+    if (wish.weekday === weekday) wish.weekday = hours.closedDay()
     if (rooms.value.length === 0) rooms.value = await callApi<Rooms[]>('/api/rooms').catch(() => [])
   }
   async function ask() {
@@ -82,27 +69,12 @@ export function useWhatIf(week: () => WeekState, clock: () => Clock, units: () =
   async function keep(): Promise<boolean> {
     const tried = asked.value
     if (tried?.kind !== 'open day' && tried?.kind !== 'hours of') return false
-    const memberId = tried.kind === 'hours of' ? tried.memberId : null
-    const done = await send(async () => {
-      const known = await callApi<HoursWire>('/api/hours')
-      const had = memberId === null ? known.studio : known.members.find(each => each.memberId === memberId)?.hours ?? null
-      const kept = [...(had ?? known.studio).filter(each => each.weekday !== tried.weekday), { weekday: tried.weekday, fromMin: tried.fromMin, toMin: tried.toMin }]
-      await callApi('/api/hours', { method: 'PUT', body: { memberId, hours: kept } })
-      before.value = { memberId, hours: had ?? [] }
-      return true
-    })
-    if (done !== null) answer.value = null
-    await readHours()
-    return done !== null
-  }
-
-  /** Puts back what stood before the hours were kept; true when it stands again. */
-  async function putBack(): Promise<boolean> {
-    const done = await send(() => callApi('/api/hours', { method: 'PUT', body: before.value }))
-    if (done !== null) before.value = null
-    await readHours()
-    return done !== null
+    const { weekday, fromMin, toMin } = tried
+    const done = await hours.keep({ memberId: tried.kind === 'hours of' ? tried.memberId : null, weekday, fromMin, toMin })
+    if (done) answer.value = null
+    return done
   }
   watch(wish, () => { answer.value = null })
+  const { before, keeping, refused, putBack } = hours
   return { wish, rooms, standing, before, answer, asked, busy, message, fields, keeping, refused, open, ask, keep, putBack }
 }
