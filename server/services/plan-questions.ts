@@ -15,20 +15,23 @@ import { whatIfWords } from '#shared/words/what-if'
 /** `askedAt` (ms UTC): the moment all of it is reckoned from, so that what is compared begins at the same time. */
 interface Kept { planId: number, askedAt: number, base: Promise<Base | Refusal>, bottleneck: Promise<BottleneckState | Refusal> | null }
 
-/** What was worked out about the plan in force, by studio: a new plan puts it away. */
+/** How long that is told of: later the day has moved on beneath it. Our own figure. */
+const keptForMs = 15 * 60_000
+
+/** What was worked out about the plan in force, by studio: a new plan puts it away, and so does a quarter of an hour. */
 export type KeptBases = Map<number, Kept>
 
 function keptFor(db: Database, studioId: number, now: number, ask: Ask, bases: KeptBases): Kept | Refusal {
   const current = db.select({ id: plan.id }).from(plan).where(scoped(plan, studioId, sql`${plan.current} = 1`)).get()
   if (!current) return impossible(whatIfWords.nothingPlanned)
   const known = bases.get(studioId)
-  if (known?.planId === current.id) return known
+  if (known?.planId === current.id && now - known.askedAt < keptForMs) return known
   const fresh: Kept = { planId: current.id, askedAt: now, base: baseOf(db, studioId, now, ask), bottleneck: null }
   bases.set(studioId, fresh)
   return fresh
 }
 
-/** What holds the plan in force back. Worked out once for each plan, on demand. `now` in ms UTC. */
+/** What holds the plan in force back. Worked out on demand, once a quarter of an hour for each plan. `now` in ms UTC. */
 export async function bottleneck(db: Database, studioId: number, now: number, ask: Ask, bases: KeptBases = new Map()): Promise<BottleneckState | Refusal> {
   const found = keptFor(db, studioId, now, ask, bases)
   if (isRefusal(found)) return { reckonedAt: null, anew: null, days: [], waited: [], more: [], seen: [] }

@@ -64,16 +64,25 @@ describe('what if', () => {
   it('is measured from the moment that the plan without it was reckoned from, and the age of the evidence counts from there', async () => {
     const { db, studioId } = await oneBench()
     const kept: KeptBases = new Map()
-    // Reckoned at 10:14; three hours later nothing could begin before 13:15.
+    // Instants of a problem count from its beginning: the same date at two of them is two beginnings.
+    const dueIn = new Set<number | null>()
+    const noting: Ask = (problem) => {
+      dueIn.add(problem.jobs[0]?.due ?? null)
+      return ask(problem)
+    }
     const asked = now + 14 * minute
-    const state = await bottleneck(db, studioId, asked, ask, kept)
+    const state = await bottleneck(db, studioId, asked, noting, kept)
     if (isRefusal(state)) throw new Error(state.message)
     expect(bottleneckEvidence(state, asked + 2 * minute)[0]).toBe('Reckoned from the studio as it stood 2 min ago, by planning copies with one more of each.')
     const change = { kind: 'places', placeKind: 'bench', more: 1 } as const
-    const soon = await askWhatIf(db, studioId, change, asked, ask, kept)
-    expect(soon).toMatchObject({ ok: true })
-    expect(await askWhatIf(db, studioId, change, asked + 3 * hour, ask, kept)).toEqual(soon)
+    expect(await askWhatIf(db, studioId, change, asked + 14 * minute, noting, kept)).toMatchObject({ ok: true })
+    expect([...dueIn]).toHaveLength(1)
+    // After a quarter of an hour the day has moved on, and both are reckoned anew.
+    expect(await askWhatIf(db, studioId, change, asked + 15 * minute, noting, kept)).toMatchObject({ ok: true })
+    expect(await bottleneck(db, studioId, asked + 16 * minute, noting, kept)).toMatchObject({ reckonedAt: asked + 15 * minute })
+    expect([...dueIn]).toHaveLength(2)
   })
+
   it('keeps nothing of what it tries', async () => {
     const { db, studioId, rooms } = await oneBench()
     const all = () => JSON.stringify([db.select().from(studioTable).all(), db.select().from(place).all(), db.select().from(openHours).all(), db.select().from(reading).all(), db.select().from(order).all(), db.select().from(planEntry).all()])
