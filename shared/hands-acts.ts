@@ -1,8 +1,10 @@
+import { leavesFilm } from '#shared/step-kinds'
 import type { Job, JobPiece } from '#shared/hands'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { FilmState } from '#shared/schemas/piece-state'
 import type { MilestoneName, StepKind } from '#shared/terms'
-import { actKeys, doneKeys } from '#shared/words/steps'
+import { stepKindWords } from '#shared/words/step-kinds'
+import { actKeys } from '#shared/words/steps'
 import { handsWords } from '#shared/words/hands'
 
 /** One key of a job: what it says, and the act a press of it tells. `needs` is asked for first. */
@@ -25,7 +27,7 @@ function doneAct(job: Job): ActChoice {
   const { step } = job.turn
   if (job.kind === 'release') return { label: actKeys.out, kind: 'it is out', body: {} }
   if (job.kind === 'check') return { label: actKeys.checkDone, kind: 'check done', body: { step: step.key } }
-  return { label: doneKeys[step.kind], kind: doneKinds[step.kind] ?? 'work done', body: { step: step.key } }
+  return { label: stepKindWords[step.kind].done, kind: doneKinds[step.kind] ?? 'work done', body: { step: step.key } }
 }
 
 function tests(job: Job): { tested: ActChoice, tacky: ActChoice } | null {
@@ -65,7 +67,7 @@ function ranked(job: Job): { act: ActChoice, who: 'step' | 'maker' | 'anybody' }
   const tested = found ? [{ act: found.tested, who: 'anybody' as const }] : []
   const tacky = found ? [{ act: found.tacky, who: 'anybody' as const }] : []
   const { step } = job.turn
-  const film = step.kind === 'coat' || step.kind === 'glue-up'
+  const film = leavesFilm(step.kind)
   const notYet = { act: { label: film ? actKeys.notYet : handsWords.stopped, kind: 'not on yet' as const, body: { step: step.key } }, who: 'step' as const }
   const began = job.kind === 'work' && job.turn.status === 'waiting' ? [{ act: { label: actKeys.began, kind: 'began' as const, body: { step: step.key } }, who: 'step' as const }] : []
   if (step.status === 'set aside') return [{ act: { label: actKeys.resume, kind: 'resumed', body: { step: step.key } }, who: 'maker' }]

@@ -1,3 +1,4 @@
+import { leavesFilm } from '#shared/step-kinds'
 import { groupMoment } from '#shared/verdict/next'
 import { turnMoment } from '#shared/verdict/piece'
 import type { ReadPiece, ReadTurn } from '#shared/verdict/piece'
@@ -102,7 +103,7 @@ function findShared(all: readonly JobPiece[]): Set<string> {
 
 /** A coat or glue-up is due whose planned start has passed without a word. */
 function isDue({ turn }: ReadTurn, now: number): boolean {
-  const wets = turn.kind === 'work' && (turn.step.kind === 'coat' || turn.step.kind === 'glue-up')
+  const wets = turn.kind === 'work' && leavesFilm(turn.step.kind)
   return wets && turn.status === 'waiting' && turn.step.status !== 'set aside' && turn.plan !== null && turn.plan.dueAt <= now && (turn.notOnAt === null || turn.notOnAt < turn.plan.dueAt)
 }
 

@@ -1,3 +1,4 @@
+import { leavesFilm } from '#shared/step-kinds'
 import type { FaceWire } from '#shared/schemas/piece-list'
 import type { ReadPiece } from '#shared/verdict/piece'
 import type { PlaceState, StudioState, TurnState } from '#shared/schemas/piece-state'
@@ -64,7 +65,7 @@ export function meantOf(pieces: readonly ReadPiece[], partNames: readonly string
 /** The coat or glue-up of a piece that waits for exactly this material, or null. */
 export function waitingFor({ turns }: ReadPiece, material: { versionId: number, name: string }, meant: MeantTakes = all): TurnState | null {
   const found = turns.find(({ turn }) => {
-    const wets = turn.kind === 'work' && (turn.step.kind === 'coat' || turn.step.kind === 'glue-up')
+    const wets = turn.kind === 'work' && leavesFilm(turn.step.kind)
     const open = (turn.status === 'waiting' || turn.status === 'doing') && turn.step.status !== 'set aside'
     return wets && open && meant.takes(turn.partIds) && (turn.step.materialVersionId === material.versionId || turn.step.material === material.name)
   })

@@ -15,6 +15,7 @@ import { planProblem } from '#shared/planning/problem'
 import type { PlanInput } from '#shared/planning/problem'
 import type { Fixed, PlanProblem } from '#shared/planning/types'
 import type { PlaceKind } from '#shared/terms'
+import { leavesFilm } from '#shared/step-kinds'
 import { studioZone } from '#shared/time'
 
 /** How far ahead a plan looks. */
@@ -117,7 +118,7 @@ function restsOf(works: readonly StepWork[], facts: PlanFacts, lags: readonly La
   const units = new Map(facts.pieces.map(each => [each.id, each.sizeUnits]))
   const next = grouped(lags, lag => lag.from ?? null)
   return works.flatMap(({ step, turns }): NonNullable<PlanInput['rests']>[number][] => {
-    if (step.placeKind === null || !kinds.has(step.placeKind) || (step.kind !== 'coat' && step.kind !== 'glue-up')) return []
+    if (step.placeKind === null || !kinds.has(step.placeKind) || !leavesFilm(step.kind)) return []
     const uses = { [placeId(step.placeKind)]: step.hold === null ? units.get(step.pieceId) ?? 1 : 1 }
     const coats = turns.filter(turn => turn.kind === 'work')
     const release = turns.find(turn => turn.kind === 'release')

@@ -6,6 +6,7 @@ import type { StudioProblem } from '~~/server/planning/problem'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { metAt, minutesFrom, rungFor } from '#shared/drying/waits'
 import type { Again, LagDraw, Luck, Recipe, Tail } from '#shared/promise/types'
+import { leavesFilm } from '#shared/step-kinds'
 import { milestoneNames } from '#shared/terms'
 
 const minute = 60_000
@@ -83,7 +84,7 @@ function tailsOf(facts: PlanFacts, given: StudioProblem, numbers: ReadonlyMap<st
   const followed = new Set(given.problem.lags.map(lag => lag.from))
   const coming = given.works.flatMap(({ step, turns, roomId }): Tail[] => {
     const last = [...turns].reverse().find(turn => turn.kind === 'work')
-    if (!last || (step.kind !== 'coat' && step.kind !== 'glue-up') || followed.has(activityId(last.id))) return []
+    if (!last || !leavesFilm(step.kind) || followed.has(activityId(last.id))) return []
     const film = toCome.film(step, roomId)
     const wait = film && curves.rung(film, handed)
     const planned = toCome.wait(step, roomId, handed, 'p90', false).minutes

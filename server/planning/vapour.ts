@@ -10,6 +10,7 @@ import { notClearBefore, readVapour } from '~~/server/services/vapour-rooms'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { minutesFrom } from '#shared/drying/waits'
+import { leavesFilm } from '#shared/step-kinds'
 import type { PlanInput } from '#shared/planning/problem'
 
 /** A room that nobody enters: who opens it, who may go on in it with the exhaust running, and the floor under its opening (ms UTC, null when it cannot be told). */
@@ -38,7 +39,7 @@ export function readShut(db: Database, studioId: number, now: number): Map<numbe
   return new Map(lines.map(({ line, room: row }) => [row.id, { operatorId: starts.get(row.id)?.exhaust === 'running' ? line.opensByMemberId : null, clearAt: notClearBefore(row, read) }]))
 }
 
-const isSolvent = ({ step }: StepWork, facts: PlanFacts) => (step.kind === 'coat' || step.kind === 'glue-up') && step.materialVersionId !== null && facts.vapour.solventVersions.has(step.materialVersionId)
+const isSolvent = ({ step }: StepWork, facts: PlanFacts) => leavesFilm(step.kind) && step.materialVersionId !== null && facts.vapour.solventVersions.has(step.materialVersionId)
 
 /** The hands of the one person who may go on with solvent coats in a shut room; null where the room is open, the work is another, or more hands than theirs are needed: nobody else is equipped. */
 export function operatorOf(work: StepWork, facts: PlanFacts, shut: ReadonlyMap<number, ShutRoom>, hands: readonly Hands[]): Hands | null {

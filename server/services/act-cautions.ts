@@ -12,12 +12,11 @@ import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { PieceState } from '#shared/schemas/piece-state'
 import { isWetSolvent } from '#shared/solvent-rooms'
 import type { StepKind } from '#shared/terms'
+import { loosens } from '#shared/step-kinds'
 import { isSolventBorne } from '#shared/vapour/facts'
 import { intakeHazards } from '#shared/words/verdict'
 import { startVapour } from '#shared/words/vapour-starts'
 
-/** What loosens dust or metal from an old object: bench work may be piercing or cutting, and nobody says that it is not. */
-const loosening: readonly StepKind[] = ['light sanding', 'flat sanding', 'levelling', 'bench work']
 const beginning: readonly TellableKind[] = ['began', 'work done']
 /** Airs that a motor or a heater makes. */
 const driven = ['warm air', 'moving'] as const
@@ -42,7 +41,8 @@ function refuseMovingIn(tx: Transaction, studioId: number, request: ActRequest, 
 function refuseOldObject(tx: Transaction, studioId: number, request: ActRequest, body: Record<string, unknown>): Refusal | null {
   const heats = request.kind === 'air' && body.kind === 'warm air'
   const scrapes = request.kind === 'stripped'
-  if (!heats && !scrapes && !(beginning.includes(request.kind) && loosening.some(kind => kind === kindOfStep(tx, studioId, request, body)))) return null
+  const begun = beginning.includes(request.kind) ? kindOfStep(tx, studioId, request, body) : null
+  if (!heats && !scrapes && !(begun && loosens(begun))) return null
   const open = tx.select({ pieceId: intake.pieceId, question: intake.question }).from(intake)
     .where(scoped(intake, studioId, inArray(intake.pieceId, request.pieces.map(each => each.id)), inArray(intake.answer, ['open', 'not tested', 'tested, found']))).get()
   if (!open) return null

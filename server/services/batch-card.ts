@@ -10,12 +10,9 @@ import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
 import { stepCautions } from '#shared/library/brief-cautions'
+import { loosens } from '#shared/step-kinds'
 import type { BatchCardState } from '#shared/schemas/batch-card'
 import type { ScheduleDetailWire } from '#shared/schemas/schedule'
-import type { StepKind } from '#shared/terms'
-
-/** What nobody has tested about an old object is minded wherever its surface is worked. */
-const touchesOldGround: readonly StepKind[] = ['light sanding', 'flat sanding', 'levelling', 'bench work']
 
 /** All that the paper twin of a batch says. `now` in ms UTC. */
 export function batchCard(db: Database, owner: StudioRow, batchId: number, address: string | null, now: number): BatchCardState | Refusal {
@@ -45,5 +42,5 @@ function cautionsByStep(db: Database, studioId: number, { steps }: ScheduleDetai
     : db.select({ id: material.id, cautions: materialVersion.cautions, solvent: materialVersion.solvent, solventKey: vapourLimit.solventKey }).from(material).innerJoin(materialVersion, eq(materialVersion.materialId, material.id))
         .leftJoin(vapourLimit, eq(vapourLimit.materialId, material.id)).where(scoped(material, studioId, inArray(material.id, ids))).orderBy(asc(materialVersion.no)).all()
   const newest = new Map(rows.map(each => [each.id, cautionsWith(each)]))
-  return Object.fromEntries(steps.map(step => [step.key, [...touchesOldGround.includes(step.kind) ? old : [], ...stepCautions(step.kind, newest.get(step.material?.id ?? 0) ?? [])]]))
+  return Object.fromEntries(steps.map(step => [step.key, [...loosens(step.kind) ? old : [], ...stepCautions(step.kind, newest.get(step.material?.id ?? 0) ?? [])]]))
 }

@@ -15,7 +15,7 @@ import { draftFromDone, filmsOf, likeness, longestRound } from '#shared/schedule
 import type { Done } from '#shared/schedules/history'
 import { localDate, studioZone } from '#shared/time'
 import type { StudioZone } from '#shared/time'
-import { isFilm } from '#shared/work/draft'
+import { leavesFilm } from '#shared/step-kinds'
 import type { Target } from '#shared/work/types'
 import { scheduleRefusals } from '#shared/words/schedule-refusals'
 import { keptName, onePart } from '#shared/words/schedule-names'
@@ -39,7 +39,7 @@ function doneTo({ parts, folded }: FoldedPiece, materials: ReadonlyMap<number, n
     const materialId = coat.materialVersionId === null ? null : materials.get(coat.materialVersionId) ?? null
     return [{ kind: coat.kind, name: step.origin === 'schedule' ? step.name : '', materialId, targets: coat.targets.map(spot), size: coat.size, ground: coat.ground, hold: coat.hold, minutes: (coat.endedAt - coat.beganAt) / 60_000, endedAt: coat.endedAt, day: localDate(coat.endedAt, zone) }]
   })
-  const work = folded.steps.filter(step => !isFilm(step) && step.status === 'done' && wanted(step.origin)).flatMap((step): Done[] => {
+  const work = folded.steps.filter(step => !leavesFilm(step.kind) && step.status === 'done' && wanted(step.origin)).flatMap((step): Done[] => {
     const endedAt = step.turns.reduce((at, turn) => Math.max(at, turn.doneAt ?? 0), 0)
     return [{ kind: step.kind, name: step.name, materialId: null, targets: step.targets.map(spot), size: step.coatSize, ground: step.ground, hold: null, minutes: step.pieceMin, endedAt, day: localDate(endedAt, zone) }]
   })

@@ -2,6 +2,7 @@ import { and, desc, inArray, isNull, sql } from 'drizzle-orm'
 import { materialFigure, milestone, vapourLimit, vapourStart } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { coatKinds } from '#shared/terms'
 import type { SheetFigures, Span } from '#shared/vapour/facts'
 import type { NamedCoat } from '#shared/vapour/picture'
 import type { CoatSize } from '#shared/terms'
@@ -75,7 +76,7 @@ export function plannedCoats(db: Reader, studioId: number, now: number, hours: n
     from plan join plan_entry entry on entry.plan_id = plan.id join turn on turn.id = entry.turn_id join piece_step step on step.id = turn.step_id join piece on piece.id = step.piece_id
       join step_target target on target.step_id = step.id join part on part.id = target.part_id join stay on stay.part_id in (part.id, part.into_part_id) and stay.to_at is null join place on place.id = stay.place_id
       join material_version version on version.id = step.material_version_id join material on material.id = version.material_id
-    where plan.studio_id = ${studioId} and plan.current = 1 and turn.status = 'waiting' and turn.kind = 'work' and step.kind in ('coat', 'glue-up') and piece.gone_at is null
+    where plan.studio_id = ${studioId} and plan.current = 1 and turn.status = 'waiting' and turn.kind = 'work' and step.kind in ${coatKinds} and piece.gone_at is null
       and entry.ends_at between ${now} and ${now + hours * 3_600_000} order by entry.ends_at, turn.id`)
   return named(db, studioId, rows, true)
 }

@@ -13,6 +13,7 @@ import type { RoomRow } from '~~/server/work/rooms-of-parts'
 import type { ActRequest, TellableKind } from '#shared/schemas/act'
 import type { VapourAsked } from '#shared/schemas/vapour'
 import { liesBehind } from '#shared/solvent-rooms'
+import { leavesFilm } from '#shared/step-kinds'
 import { isSolventBorne } from '#shared/vapour/facts'
 import { benchRefusals } from '#shared/words/bench-refusals'
 import { listText } from '#shared/words/group'
@@ -32,7 +33,7 @@ function materialsOf(tx: Transaction, studioId: number, request: ActRequest, bod
   const steps = typeof body.step === 'string'
     ? tx.select({ kind: pieceStep.kind, versionId: pieceStep.materialVersionId }).from(pieceStep).where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, pieceIds), eq(pieceStep.key, body.step))).all()
     : []
-  const films = steps.filter(step => step.kind === 'coat' || step.kind === 'glue-up')
+  const films = steps.filter(step => leavesFilm(step.kind))
   if (typeof body.step === 'string' && films.length === 0) return []
   const versionIds = typeof body.materialVersionId === 'number' ? [body.materialVersionId] : [...new Set(films.map(step => step.versionId))]
   const known = versionIds.flatMap(id => id ?? [])

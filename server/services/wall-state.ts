@@ -1,4 +1,5 @@
 import type { FilmState, PieceState, StudioState, TurnState } from '#shared/schemas/piece-state'
+import { leavesFilm } from '#shared/step-kinds'
 import { sheetWords } from '#shared/words/sheet'
 
 /**
@@ -26,7 +27,7 @@ function wallPiece(piece: PieceState): PieceState {
 const wallFilm = (film: FilmState): FilmState => ({ ...film, actId: 0, step: null, material: film.material === null ? null : '', materialVersionId: null, windows: [] })
 
 /** The turns a verdict reads: one that somebody is at, and the next coat or glue-up with its planned start. */
-const speaks = ({ doing, kind, step, plan }: TurnState) => doing !== null || (kind === 'work' && (step.kind === 'coat' || step.kind === 'glue-up') && plan !== null)
+const speaks = ({ doing, kind, step, plan }: TurnState) => doing !== null || (kind === 'work' && leavesFilm(step.kind) && plan !== null)
 
 function wallTurn(turn: TurnState): TurnState {
   return {

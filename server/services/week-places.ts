@@ -1,3 +1,4 @@
+import { leavesFilm } from '#shared/step-kinds'
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { PlaceKind } from '#shared/terms'
 
@@ -49,7 +50,7 @@ function movesOf(facts: PlanFacts, planned: readonly Planned[], kinds: ReadonlyS
     const inPlan = (kind: string) => own.filter(turn => turn.kind === kind).flatMap(turn => entries.get(turn.id) ?? [])
     const found: Move[] = []
     const first = inPlan('work')[0]
-    const lays = step.kind === 'coat' || step.kind === 'glue-up'
+    const lays = leavesFilm(step.kind)
     if (first && lays && step.placeKind !== null && kinds.has(step.placeKind)) found.push({ at: first.startsAt, kind: step.placeKind, units: step.hold === null ? units.get(step.pieceId) ?? 1 : 1 })
     for (const release of inPlan('release')) found.push({ at: release.endsAt, kind: null, units: 0 })
     if (step.kind === 'packing') for (const done of inPlan('work')) found.push({ at: done.endsAt, kind: null, units: 0 })

@@ -6,8 +6,9 @@ import { scoped } from '~~/server/utils/scoped'
 import { predictPieces } from '~~/server/work/predict'
 import { roomsOfParts } from '~~/server/work/rooms-of-parts'
 import type { RoomRow } from '~~/server/work/rooms-of-parts'
+import { sands } from '#shared/step-kinds'
 import { intakeQuestions } from '#shared/terms'
-import type { ActKind, StepKind } from '#shared/terms'
+import type { ActKind } from '#shared/terms'
 import { isSolventBorne } from '#shared/vapour/facts'
 
 interface Told { actId: number, kind: ActKind, body: Record<string, unknown>, pieceIds: number[], memberId: number | null, doneAt: number, now: number }
@@ -54,14 +55,12 @@ function noteVapourAndRags(tx: Transaction, studioId: number, told: Told) {
 /** The sander, its bag and its paper hold oil too, after a film of drying oil was sanded. */
 function noteOilDust(tx: Transaction, studioId: number, told: Told) {
   const kind = typeof told.body.step === 'string' ? tx.select({ kind: pieceStep.kind }).from(pieceStep).where(scoped(pieceStep, studioId, inArray(pieceStep.pieceId, told.pieceIds), eq(pieceStep.key, told.body.step))).get()?.kind : null
-  if (!sandingKinds.some(each => each === kind)) return
+  if (!kind || !sands(kind)) return
   const oiled = tx.select({ partId: coatTarget.partId }).from(coat).innerJoin(materialVersion, eq(materialVersion.id, coat.materialVersionId)).innerJoin(coatTarget, eq(coatTarget.coatId, coat.id))
     .where(scoped(coat, studioId, inArray(coat.pieceId, told.pieceIds), isNull(coat.settledAt), isNull(coat.strippedAt), eq(materialVersion.dryingOil, true))).all()
   const roomOf = roomsOfParts(tx, studioId, told.pieceIds)
   for (const roomId of new Set(oiled.flatMap(each => roomOf(each.partId)?.id ?? []))) askForRags(tx, studioId, roomId, told.doneAt, told)
 }
-
-const sandingKinds: readonly StepKind[] = ['light sanding', 'flat sanding', 'levelling']
 
 /** Solvent work that begins shuts a spray area at once, before the first coat is told. */
 function shutAtStart(tx: Transaction, studioId: number, told: Told) {

@@ -1,3 +1,4 @@
+import { leavesFilm, sands } from '#shared/step-kinds'
 import type { CautionKey } from '#shared/library/cautions'
 import type { StepKind } from '#shared/terms'
 
@@ -27,12 +28,9 @@ const brief = {
 /** The last words of every brief line: what it defers to. */
 export const briefDeferral = 'Read the data sheet'
 
-const sanding: readonly StepKind[] = ['light sanding', 'flat sanding', 'levelling']
-const wet: readonly StepKind[] = ['coat', 'glue-up']
-
 /** The cautions to be read in few words where a step is done: those of what it puts on, and those of its dust. */
 export function stepCautions(kind: StepKind, ofMaterial: readonly string[]): string[] {
-  const keys = sanding.includes(kind) ? ['sanding dust'] : wet.includes(kind) ? ofMaterial.filter(key => key !== 'sanding dust') : []
+  const keys = sands(kind) ? ['sanding dust'] : leavesFilm(kind) ? ofMaterial.filter(key => key !== 'sanding dust') : []
   return Object.keys(brief).filter(key => keys.includes(key))
 }
 

@@ -3,6 +3,7 @@ import { linkBetween, mendedLink } from '#shared/schedules/link'
 import type { Sheets } from '#shared/schedules/link'
 import { meet, stepsAfter, surfacesOf } from '#shared/schedules/graph'
 import type { DraftLink, DraftStep, ScheduleDraft } from '#shared/schemas/schedule-draft'
+import { leavesFilm } from '#shared/step-kinds'
 import { nameApart, stepNameOf } from '#shared/words/schedule-names'
 import type { StepKind } from '#shared/terms'
 
@@ -153,7 +154,7 @@ export function changeStep(draft: ScheduleDraft, key: string, patch: Partial<Dra
 
 /** What follows from a new kind or material: the name while nobody has given one, the hold, the faces of a glue-up. */
 function refitted(old: DraftStep, wanted: DraftStep, draft: ScheduleDraft, sheets: Sheets): DraftStep {
-  const lays = wanted.kind === 'coat' || wanted.kind === 'glue-up'
+  const lays = leavesFilm(wanted.kind)
   const step = { ...wanted, materialId: lays ? wanted.materialId : null }
   if (step.kind === old.kind && step.materialId === old.materialId) return { ...step, targets: fittingTargets(step) }
   const others = draft.steps.filter(each => each.key !== old.key)

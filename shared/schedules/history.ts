@@ -1,4 +1,5 @@
 import { freshStep, insertStep } from '#shared/schedules/edit'
+import { leavesFilm } from '#shared/step-kinds'
 import type { Sheets } from '#shared/schedules/link'
 import type { DraftPart, DraftTarget, ScheduleDraft } from '#shared/schemas/schedule-draft'
 import type { CoatSize, Ground, Hold, StepKind } from '#shared/terms'
@@ -69,4 +70,4 @@ export const longestRound = (done: readonly Done[]) => rounds(done).reduce((long
 
 /** The films of a schedule in their order with how often each goes on: by it a kept schedule is known again. */
 export const filmsOf = (steps: readonly { kind: StepKind, materialId: number | null, perDay: number, days: number }[]) =>
-  steps.filter(step => step.kind === 'coat' || step.kind === 'glue-up').map(step => `${step.kind} ${step.materialId ?? ''} ${step.perDay * step.days}`).join('\n')
+  steps.filter(step => leavesFilm(step.kind)).map(step => `${step.kind} ${step.materialId ?? ''} ${step.perDay * step.days}`).join('\n')

@@ -1,3 +1,4 @@
+import { leavesFilm } from '#shared/step-kinds'
 import type { ScheduleMaterialWire } from '#shared/schemas/schedule'
 import type { DraftLink, DraftStep } from '#shared/schemas/schedule-draft'
 import type { MilestoneName, Risk, StepKind } from '#shared/terms'
@@ -7,7 +8,7 @@ export type Sheets = ReadonlyMap<number, ScheduleMaterialWire>
 
 /** The material of a step that leaves a film, or null. */
 export function sheetOf(step: Pick<DraftStep, 'kind' | 'materialId'>, sheets: Sheets): ScheduleMaterialWire | null {
-  return (step.kind === 'coat' || step.kind === 'glue-up') && step.materialId !== null ? sheets.get(step.materialId) ?? null : null
+  return leavesFilm(step.kind) && step.materialId !== null ? sheets.get(step.materialId) ?? null : null
 }
 
 /** What a step's film must have come to before the next begins, the best word first; which is there depends on the ladder. */

@@ -3,6 +3,7 @@ import type { SystemRuleWire } from '#shared/schemas/schedule'
 import type { DraftLink, DraftStep, ScheduleDraft } from '#shared/schemas/schedule-draft'
 import { circleOf, connectedTo, meet, stepsAfter, surfacesOf } from '#shared/schedules/graph'
 import { milestonesAfter, sheetOf } from '#shared/schedules/link'
+import { leavesFilm } from '#shared/step-kinds'
 import type { Sheets } from '#shared/schedules/link'
 import type { Reckoned } from '#shared/schedules/reckon'
 
@@ -50,7 +51,7 @@ function targetProblems({ parts }: ScheduleDraft, step: DraftStep): ScheduleProb
 }
 
 function stepProblems(draft: ScheduleDraft, step: DraftStep, sheets: Sheets): ScheduleProblem[] {
-  const lays = step.kind === 'coat' || step.kind === 'glue-up'
+  const lays = leavesFilm(step.kind)
   const at = { step: step.key }
   const material = step.materialId === null ? undefined : sheets.get(step.materialId)
   return [

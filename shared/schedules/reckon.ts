@@ -1,4 +1,5 @@
 import { walkSchedule } from '#shared/schedule-walk'
+import { leavesFilm } from '#shared/step-kinds'
 import type { Walk } from '#shared/schedule-walk'
 import type { ScheduleDetailWire, ScheduleLinkWire, ScheduleStepWire, WaitWire } from '#shared/schemas/schedule'
 import type { DraftLink, DraftStep, ScheduleDraft } from '#shared/schemas/schedule-draft'
@@ -44,7 +45,7 @@ export function handsOn(steps: readonly Pick<ScheduleStepWire, 'perDay' | 'days'
 function stepWire(step: DraftStep, parts: ScheduleDraft['parts'], names: ReadonlyMap<number, { id: number, name: string }>, films: Films): ScheduleStepWire {
   const { key, name, kind, hold, dust, perDay, days, untilEnough, setupMin, pieceMin, cleanMin, releaseMin, hands } = step
   const its = step.materialId === null ? undefined : names.get(step.materialId)
-  const film = kind === 'coat' || kind === 'glue-up'
+  const film = leavesFilm(kind)
   const on = targetsOf(step, parts)
   return {
     key, name, kind, hold, dust, perDay, days, untilEnough, setupMin, pieceMin, cleanMin, releaseMin, hands,

@@ -1,5 +1,6 @@
 import type { MilestonePrediction } from '#shared/drying/types'
 import type { FilmState, GroupState, PartState, PieceState, RoomState, SessionState, TurnState } from '#shared/schemas/piece-state'
+import { leavesFilm } from '#shared/step-kinds'
 import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
 import type { Film, Grip, Moment, PartFacts } from '#shared/verdict/types'
@@ -51,7 +52,7 @@ function doingOf(turns: readonly TurnState[]): PartFacts['doing'] {
 /** The first planned coat or glue-up that nobody has spoken to since. */
 function dueOf(turns: readonly TurnState[]): PartFacts['due'] {
   const due = turns.flatMap((turn) => {
-    const wets = turn.kind === 'work' && (turn.step.kind === 'coat' || turn.step.kind === 'glue-up')
+    const wets = turn.kind === 'work' && leavesFilm(turn.step.kind)
     if (!wets || turn.status !== 'waiting' || turn.step.status === 'set aside' || !turn.plan) return []
     return turn.notOnAt !== null && turn.notOnAt >= turn.plan.dueAt ? [] : [{ at: turn.plan.dueAt, what: turn.step.name }]
   })

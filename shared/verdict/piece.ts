@@ -1,3 +1,4 @@
+import { leavesFilm } from '#shared/step-kinds'
 import { lateness, mayBegin, stepState } from '#shared/verdict/begin'
 import type { MayBegin, StepState, Who } from '#shared/verdict/begin'
 import { groupFacts } from '#shared/verdict/facts'
@@ -60,7 +61,7 @@ function readTurn(piece: PieceState, turn: TurnState, where: Whereabouts, now: n
 
 /** Whether somebody may go on in a shut room: the one who began there, with the exhaust running, and only with solvent coats. */
 function goesOn({ step }: TurnState, operatorId: number | null, who: Who): boolean {
-  return operatorId !== null && who.memberId === operatorId && step.solventBorne && (step.kind === 'coat' || step.kind === 'glue-up')
+  return operatorId !== null && who.memberId === operatorId && step.solventBorne && leavesFilm(step.kind)
 }
 
 /** The next moment of one turn alone, for a list of work: chosen as a piece's own is, without its verdict. */

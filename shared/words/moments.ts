@@ -1,10 +1,11 @@
 import { clockTime, roughTime } from '#shared/time'
+import { stepKindWords } from '#shared/words/step-kinds'
 import { betterText, predictionReason } from '#shared/words/verdict'
 import { lowerFirst, milestoneText, stepAct, stepNoun, titled } from '#shared/words/steps'
 import type { BeginReason, StepState } from '#shared/verdict/begin'
 import type { NextMoment, StartBy } from '#shared/verdict/next'
 import type { Clock } from '#shared/time'
-import type { DoubtCause, Hold, StepKind, StepStatus } from '#shared/terms'
+import type { DoubtCause, Hold, StepStatus } from '#shared/terms'
 
 const someText = (count: number) => (count === 1 ? 'one' : `${count}`)
 
@@ -99,10 +100,6 @@ const doubts: Record<DoubtCause, string> = {
   unknown: 'something went wrong: test or strip before anything else',
 }
 const holds: Record<Hold, string> = { clamps: 'in clamps', press: 'in the press', weight: 'under weight' }
-const kinds: Record<StepKind, string> = {
-  'coat': 'coats', 'glue-up': 'glue-ups', 'light sanding': 'light sanding', 'flat sanding': 'flat sanding',
-  'levelling': 'levelling', 'turn over': 'turning over', 'bench work': 'bench work', 'packing': 'packing',
-}
 
 /** Why a step may or may not begin. */
 export function beginReason(reason: BeginReason): string {
@@ -118,7 +115,7 @@ export function beginReason(reason: BeginReason): string {
     case 'window to come': return `the window after ${titled(reason.step)} is not open yet`
     case 'window shut': return `the window after ${titled(reason.step)} has shut`
     case 'keep out': return `keep out of ${reason.room}`
-    case 'role': return `${kinds[reason.kind]}: for those the owner allows`
+    case 'role': return `${stepKindWords[reason.kind].many}: for those the owner allows`
   }
 }
 

@@ -1,14 +1,11 @@
+import { stepKindWords } from '#shared/words/step-kinds'
 import type { StepKind } from '#shared/terms'
-
-const byKind: Record<StepKind, string> = {
-  'coat': 'Coat', 'glue-up': 'Glue up', 'light sanding': 'Sand lightly', 'flat sanding': 'Sand flat', 'levelling': 'Level',
-  'turn over': 'Turn over', 'bench work': 'Bench work', 'packing': 'Pack',
-}
 
 /** What a step is called until somebody names it: "Acrylic gesso", "Glue up with white PVA", "Sand lightly". */
 export function stepNameOf(kind: StepKind, material: string | null): string {
-  if (material === null) return byKind[kind]
-  return kind === 'glue-up' ? `${byKind[kind]}: ${material}` : material
+  const { title } = stepKindWords[kind]
+  if (material === null) return title
+  return kind === 'glue-up' ? `${title}: ${material}` : material
 }
 
 /** The same told apart from its like: "Sand lightly, second time". */

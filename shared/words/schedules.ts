@@ -1,5 +1,5 @@
 import type { ScheduleLinkWire, ScheduleStepWire, WaitWire } from '#shared/schemas/schedule'
-import type { Hold, Risk, StepKind } from '#shared/terms'
+import type { Hold, Risk } from '#shared/terms'
 import { span } from '#shared/time'
 import { lowerFirst, milestoneText, titled } from '#shared/words/steps'
 
@@ -31,8 +31,6 @@ export const scheduleWords = {
   first: 'Begins at once.',
 } as const
 
-const kinds: Record<StepKind, string> = { 'coat': 'coat', 'glue-up': 'glue-up', 'light sanding': 'light sanding', 'flat sanding': 'flat sanding', 'levelling': 'levelling', 'turn over': 'turn over', 'bench work': 'bench work', 'packing': 'packing' }
-export const kindName = (kind: StepKind) => kinds[kind]
 const holds: Record<Hold, string> = { clamps: 'in clamps', press: 'in the press', weight: 'under weight' }
 
 /** "45 min", "10 h", "3.5 days": minutes of waiting, no finer than anybody plans by. */

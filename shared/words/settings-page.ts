@@ -1,5 +1,5 @@
 import { cautionParts } from '#shared/library/caution-parts'
-import type { PlaceKind, Role, StepKind } from '#shared/terms'
+import type { PlaceKind, Role } from '#shared/terms'
 
 /** What the pages of the settings say. */
 export const settingsWords = {
@@ -118,8 +118,6 @@ export const hoursForm = {
 
 const roleNames: Record<Role, string> = { owner: 'owner', maker: 'maker', helper: 'helper' }
 export const roleName = (role: Role) => roleNames[role]
-
-export const stepKindNames: Record<StepKind, string> = { 'coat': 'coats', 'glue-up': 'glue-ups', 'light sanding': 'light sanding', 'flat sanding': 'flat sanding', 'levelling': 'levelling', 'turn over': 'turning over', 'bench work': 'bench work', 'packing': 'packing' }
 
 export const peopleForm = {
   people: 'Who belongs here',

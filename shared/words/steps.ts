@@ -1,6 +1,7 @@
 import { ragAnswers } from '#shared/terms'
 import { listText } from '#shared/words/group'
 import { ragAnswerTexts } from '#shared/words/rags'
+import { stepKindWords } from '#shared/words/step-kinds'
 import type { ActKind, GoneWay, Hold, MilestoneName, StepKind } from '#shared/terms'
 
 /** A name in the middle of a line: "Second varnish" as "second varnish", but "PVA on the spine" as it is. */
@@ -10,18 +11,16 @@ export function lowerFirst(name: string): string {
   return shouted ? name : name.charAt(0).toLowerCase() + name.slice(1)
 }
 
-const acts: Partial<Record<StepKind, string>> = { 'light sanding': 'sand lightly', 'flat sanding': 'sand flat', 'levelling': 'level', 'turn over': 'turn over' }
-
 /** What hands do in a step: "sand lightly"; for coats, glue-ups and bench work the step's own name: "second varnish". */
 export function stepAct(kind: StepKind, name: string): string {
-  return acts[kind] ?? lowerFirst(name)
+  const { speaks, title } = stepKindWords[kind]
+  return lowerFirst(speaks ? title : name)
 }
-
-const nouns: Partial<Record<StepKind, string>> = { 'light sanding': 'light sanding', 'flat sanding': 'flat sanding', 'levelling': 'levelling', 'turn over': 'turning over' }
 
 /** A step at the head of a line or behind a colon: "light sanding", "second varnish". */
 export function stepLabel(kind: StepKind, name: string): string {
-  return nouns[kind] ?? lowerFirst(name)
+  const { speaks, many } = stepKindWords[kind]
+  return speaks ? many : lowerFirst(name)
 }
 
 /** What stands where nobody has named a step. */
@@ -32,7 +31,8 @@ export const titled = (name: string) => (name === '' || name === nameless ? name
 
 /** A step inside a sentence, as a thing to start: "light sanding", “Second varnish”. */
 export function stepNoun(kind: StepKind, name: string): string {
-  return nouns[kind] ?? titled(name)
+  const { speaks, many } = stepKindWords[kind]
+  return speaks ? many : titled(name)
 }
 
 const milestones: Record<MilestoneName, string> = {
@@ -44,18 +44,6 @@ const milestones: Record<MilestoneName, string> = {
 /** A milestone as the trade says it. */
 export function milestoneText(name: MilestoneName): string {
   return milestones[name]
-}
-
-/** The key that says the common fact about a step: what a thumb presses when it is done. */
-export const doneKeys: Record<StepKind, string> = {
-  'coat': 'Coat is on',
-  'glue-up': 'Glue-up is on',
-  'light sanding': 'Sanded',
-  'flat sanding': 'Sanded flat',
-  'levelling': 'Levelled',
-  'turn over': 'Turned over',
-  'bench work': 'Done',
-  'packing': 'Packed',
 }
 
 /** Keys of the other acts. */

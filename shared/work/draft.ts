@@ -1,3 +1,4 @@
+import { leavesFilm } from '#shared/step-kinds'
 import type { MilestoneName, TurnKind } from '#shared/terms'
 import type { Folded, FoldedCoat, ProblemCode, Seed, SeedPart, Step, Target, Turn, WorkAct } from '#shared/work/types'
 
@@ -45,13 +46,8 @@ export function settleStatus(step: Step) {
   const done = work.filter(turn => turn.status === 'done')
   if (work.some(turn => turn.status === 'doing')) step.status = 'doing'
   else if (done.length === 0) step.status = 'waiting'
-  else if (isFilm(step) || work.some(turn => turn.status === 'waiting')) step.status = 'resting'
+  else if (leavesFilm(step.kind) || work.some(turn => turn.status === 'waiting')) step.status = 'resting'
   else step.status = 'done'
-}
-
-/** Whether doing this step leaves something that dries or sets. */
-export function isFilm(step: Pick<Step, 'kind'>): boolean {
-  return step.kind === 'coat' || step.kind === 'glue-up'
 }
 
 /** The faces under a set of parts, or the part itself where it has none. */

@@ -1,9 +1,10 @@
 import type { ActKind } from '#shared/terms'
+import { leavesFilm } from '#shared/step-kinds'
 import { coatOn, enough, glueUpOn, itIsOut, stripped } from '#shared/work/films'
 import { droppedOut, rejoined, windowMissed } from '#shared/work/splices'
 import { began, cancelled, checkDone, leftOut, notOnYet, resumed, setAside, workDone } from '#shared/work/steps'
 import { air, back, gone, moved, notThere, regrouped, seen, started, touchTest } from '#shared/work/whereabouts'
-import { isFilm, latestAt, startDraft } from '#shared/work/draft'
+import { latestAt, startDraft } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
 import type { Folded, Seed, Step, WorkAct } from '#shared/work/types'
 
@@ -66,7 +67,7 @@ function inOrder(acts: readonly WorkAct[]): WorkAct[] {
 function closeRests(draft: Draft) {
   const begun = new Set(draft.steps.filter(step => ['doing', 'resting', 'done'].includes(step.status)).map(step => step.key))
   for (const step of draft.steps) {
-    if (step.status !== 'resting' || !isFilm(step) || step.turns.some(turn => turn.kind === 'work' && turn.status === 'waiting')) continue
+    if (step.status !== 'resting' || !leavesFilm(step.kind) || step.turns.some(turn => turn.kind === 'work' && turn.status === 'waiting')) continue
     const held = draft.coats.some(coat => coat.turn?.step === step.key && coat.hold !== null && coat.outAt === null && coat.strippedAt === null)
     if (held) continue
     const followed = draft.links.some(link => link.from === step.key && begun.has(link.to))

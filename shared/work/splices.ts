@@ -1,4 +1,5 @@
-import { cannotBe, insertedStep, isFilm, linksFrom, sandable, stepNamed } from '#shared/work/draft'
+import { leavesFilm } from '#shared/step-kinds'
+import { cannotBe, insertedStep, linksFrom, sandable, stepNamed } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
 import type { Step, WorkAct } from '#shared/work/types'
 
@@ -11,7 +12,7 @@ const fillMinutes = 5
  * flat, is levelled, and only then does the piece take the step that waited on the coat.
  */
 export function droppedOut(draft: Draft, act: WorkAct) {
-  const coated = draft.steps.filter(step => isFilm(step) && step.turns.some(turn => turn.kind === 'work' && turn.status === 'done'))
+  const coated = draft.steps.filter(step => leavesFilm(step.kind) && step.turns.some(turn => turn.kind === 'work' && turn.status === 'done'))
   const from = stepNamed(draft, act.body.step) ?? coated.reduce<Step | null>((last, step) => (last === null || step.ordinal > last.ordinal ? step : last), null)
   if (!from) return cannotBe(draft, act, 'no such step')
   const common = { origin: 'branch' as const, insertedByActId: act.rootId, targets: from.targets }

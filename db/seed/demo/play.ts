@@ -14,6 +14,7 @@ import type { Membership } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
+import { leavesFilm } from '#shared/step-kinds'
 import type { ActRequest, CorrectionRequest, TellableKind } from '#shared/schemas/act'
 import type { BatchRequest } from '#shared/schemas/batch'
 import type { PieceState } from '#shared/schemas/piece-state'
@@ -172,7 +173,7 @@ function silentSteps(pieces: readonly PieceState[], at: number) {
   const silent = new Map<string, { batch: string, step: string, pieces: number[] }>()
   for (const piece of pieces) {
     for (const { kind, status, step, plan } of piece.turns) {
-      if (kind !== 'work' || status !== 'waiting' || (step.kind !== 'coat' && step.kind !== 'glue-up') || !plan || plan.dueAt > at) continue
+      if (kind !== 'work' || status !== 'waiting' || !leavesFilm(step.kind) || !plan || plan.dueAt > at) continue
       const known = silent.get(`${piece.batch.id} ${step.key}`) ?? { batch: piece.batch.name, step: step.key, pieces: [] }
       silent.set(`${piece.batch.id} ${step.key}`, { ...known, pieces: [...known.pieces, piece.id] })
     }

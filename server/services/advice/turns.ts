@@ -16,6 +16,7 @@ import { clocks } from '~~/server/work/film-cases'
 import { dryingMaterials } from '~~/server/work/materials'
 import { predictCoat } from '#shared/drying/predict'
 import type { Advice } from '#shared/drying/types'
+import { leavesFilm } from '#shared/step-kinds'
 import { beforeText, besideSolventBefore } from '#shared/words/advice'
 
 /** Advice about what is about to go on, be joined or be packed: what would come of beginning as soon as it may. */
@@ -27,7 +28,7 @@ export function turnAdvice(asked: Asked): Said[] {
 
 /** What the air of the room would do to a coat or a glue line that went on as soon as it may. Pieces that would fare alike are reckoned once. */
 function airAdvice({ db, owner, now, gaps }: Asked, soon: readonly SoonTurn[]): Said[] {
-  const wets = soon.filter(({ turn }) => turn.step.materialVersionId !== null && (turn.step.kind === 'coat' || turn.step.kind === 'glue-up'))
+  const wets = soon.filter(({ turn }) => turn.step.materialVersionId !== null && leavesFilm(turn.step.kind))
   const benches = benchesOf(db, owner.id, dryingMaterials(db, owner.id, wets.flatMap(each => each.turn.step.materialVersionId ?? [])))
   const howOf = howDone(db, owner.id, wets)
   const clockOf = clocks(roomAirs(db, owner, now), airOf(owner), now)

@@ -3,7 +3,8 @@ import { actKinds, doubtCauses, holds, milestoneNames, stepKinds, stepStatuses }
 import { studioZone } from '#shared/time'
 import { stepStates } from '#shared/verdict/begin'
 import { aboutText, beginReason, lateWhy, momentReason, momentText, stepStateText } from '#shared/words/moments'
-import { actKeys, actText, doneKeys, lowerFirst, milestoneText, nameless, stepAct, stepLabel, stepNoun, takenBack, timeKeys, titled } from '#shared/words/steps'
+import { stepKindWords } from '#shared/words/step-kinds'
+import { actKeys, actText, lowerFirst, milestoneText, nameless, stepAct, stepLabel, stepNoun, takenBack, timeKeys, titled } from '#shared/words/steps'
 import type { BeginReason } from '#shared/verdict/begin'
 import type { NextMoment } from '#shared/verdict/next'
 import { hour, minute } from '../verdict/facts'
@@ -93,7 +94,7 @@ describe('steps in words', () => {
     const said = [
       ...reasons.map(beginReason), ...stepStates.map(state => stepStateText(state)), ...milestoneNames.map(milestoneText), takenBack,
       ...actKinds.map(kind => actText(kind)), ...actKinds.map(kind => actText(kind, { step, place: 'Shelf B', reason: 'a run', answer: 'none', hold: 'press', air: 'sun' })),
-      ...Object.values(doneKeys), ...Object.values(actKeys), ...timeKeys.map(key => key.label),
+      ...Object.values(stepKindWords).map(kind => kind.done), ...Object.values(actKeys), ...timeKeys.map(key => key.label),
     ]
     for (const text of said) {
       expect(text).toMatch(/^[^\s].*[^\s.!]$/)
