@@ -1,7 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { check, index, integer, primaryKey, sqliteTable, text, unique } from 'drizzle-orm/sqlite-core'
 import { channels, deliveryStatuses, reminderStatuses } from '#shared/terms'
-import type { Channel } from '#shared/terms'
+import type { CallKind, Channel } from '#shared/terms'
 import { belongsTo, id, instant, oneOf, studioKey, within } from './columns'
 import { member, studioColumn } from './studio'
 import { act } from './acts'
@@ -21,7 +21,7 @@ export const quietHours = sqliteTable('quiet_hours', {
 export const cause = sqliteTable('cause', {
   id: id(),
   studioId: studioColumn(),
-  kind: text('kind').notNull(),
+  kind: text('kind').$type<CallKind>().notNull(),
   subjectType: text('subject_type').notNull(),
   subjectId: integer('subject_id').notNull(),
   groupKey: text('group_key').notNull(),

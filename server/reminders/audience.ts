@@ -4,20 +4,10 @@ import { act, callChoice, member, person, ragDuty, subscription } from '~~/db/sc
 import type { Database, Transaction } from '~~/server/utils/database'
 import { fireCallKinds } from '#shared/terms'
 import type { CallKind, Channel, Role } from '#shared/terms'
-import type { Audience } from './types'
+import { callTraits } from './kinds'
 
 /** Where one sending goes: a browser's subscription (its row) or a member's mail (the member's row). */
 export interface Endpoint { channel: Channel, endpointId: number, memberId: number, address: string }
-
-/**
- * Who hears of a call. A fire call goes first to the makers and to whoever did the work, and 15 minutes later to
- * everybody, and nobody can choose otherwise.
- */
-export function audienceOf(kind: CallKind, repeat: number): Audience {
-  if (kind === 'vapour') return 'everybody'
-  if (kind !== 'rags') return 'makers'
-  return repeat === 0 ? 'makers and the one who did it' : 'everybody'
-}
 
 /** Whether a kind can be switched off by a member: fire calls cannot. */
 export const isSwitchable = (kind: CallKind) => !fireCallKinds.some(fire => fire === kind)
@@ -39,7 +29,7 @@ export function endpointsFor(tx: Database | Transaction, studioId: number, call:
 }
 
 function listeners(tx: Database | Transaction, studioId: number, call: { kind: CallKind, repeat: number, subjectId: number }) {
-  const audience = audienceOf(call.kind, call.repeat)
+  const audience = callTraits[call.kind].audience(call.repeat)
   const members = tx.select({ memberId: member.id, role: member.role, email: person.email }).from(member).innerJoin(person, eq(member.personId, person.id))
     .where(and(eq(member.studioId, studioId), isNull(member.leftAt))).all()
   if (audience === 'everybody') return members

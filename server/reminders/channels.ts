@@ -3,15 +3,9 @@ import { pushKeys } from '~~/server/push/keys'
 import { sendPush } from '~~/server/push/send'
 import type { Config } from '~~/server/utils/config'
 import type { Database } from '~~/server/utils/database'
-import type { CallKind } from '#shared/terms'
 import { callWords } from '#shared/words/calls'
-import { isUrgent } from './claim'
+import { callTraits } from './kinds'
 import type { Channels, OutgoingCall, SendOutcome } from './types'
-
-const minute = 60
-
-/** How long a push service may keep trying, in seconds: until the call is asked again, or says nothing any more. */
-const timeToLive: Record<CallKind, number> = { 'rags': 15 * minute, 'vapour': 60 * minute, 'check the room': 60 * minute, 'last moment to start': 30 * minute, 'ready': 240 * minute, 'before you leave': 120 * minute, 'promise slipping': 12 * 60 * minute }
 
 /** The ways out of this installation, by its settings. */
 export function openChannels(db: Database, config: Config): Channels {
@@ -20,7 +14,8 @@ export function openChannels(db: Database, config: Config): Channels {
     push: async (call): Promise<SendOutcome> => {
       if (call.to.channel !== 'push') return { kind: 'failed', problem: callWords.delivery.nobodyThere }
       const { title, body, path, stableId } = call
-      return sendPush(call.to, { title, body, path, tag: stableId }, { topic: stableId, ttl: timeToLive[call.kind], urgency: isUrgent(call.kind) ? 'high' : 'normal' }, push)
+      const { urgent, keptMin } = callTraits[call.kind]
+      return sendPush(call.to, { title, body, path, tag: stableId }, { topic: stableId, ttl: keptMin * 60, urgency: urgent ? 'high' : 'normal' }, push)
     },
     mail: async call => call.to.channel === 'mail' ? sendMail(toMail(call, call.to, config), config) : { kind: 'failed', problem: callWords.delivery.nobodyThere },
   }

@@ -4,14 +4,12 @@ import type { Database, Transaction } from '~~/server/utils/database'
 import type { CallKind } from '#shared/terms'
 import { callWords } from '#shared/words/calls'
 import { endpointsFor, stableWords } from './audience'
+import { callTraits } from './kinds'
 import { deliverySeed, stableIdOf } from './stableId'
 
 /** How long a claim holds before another tick may take the call over, in ms. */
 export const leaseMs = 5 * 60_000
 const atOnce = 20
-
-/** Calls whose loss costs more than hearing them twice: fire, and the last moment. */
-export const isUrgent = (kind: CallKind) => kind === 'rags' || kind === 'vapour' || kind === 'last moment to start'
 
 /**
  * Takes hold of the calls that are due, and of those whose holder is gone, in one transaction, and writes down
@@ -27,7 +25,7 @@ export function claimDue(db: Database, now: number): { id: number, studioId: num
       .orderBy(reminder.dueAt, reminder.id).limit(atOnce).all()
     for (const row of rows) {
       if (row.reminder.status === 'due') writeDeliveries(tx, row, seed, now)
-      else resolveLeftovers(tx, row.reminder.id, row.cause.kind as CallKind, now)
+      else resolveLeftovers(tx, row.reminder.id, row.cause.kind, now)
       tx.update(reminder).set({ status: 'claimed', leaseUntil: now + leaseMs }).where(eq(reminder.id, row.reminder.id)).run()
     }
     return rows.map(({ reminder: { id, studioId } }) => ({ id, studioId }))
@@ -36,7 +34,7 @@ export function claimDue(db: Database, now: number): { id: number, studioId: num
 
 function writeDeliveries(tx: Transaction, row: { reminder: typeof reminder.$inferSelect, cause: typeof cause.$inferSelect }, seed: string, now: number) {
   const { studioId, id: reminderId, stage, repeat } = row.reminder
-  const call = { kind: row.cause.kind as CallKind, repeat, subjectId: row.cause.subjectId }
+  const call = { kind: row.cause.kind, repeat, subjectId: row.cause.subjectId }
   for (const endpoint of endpointsFor(tx, studioId, call)) {
     const stableId = stableIdOf(seed, stableWords(row.cause, stage, repeat, endpoint))
     tx.insert(delivery).values({
@@ -48,7 +46,7 @@ function writeDeliveries(tx: Transaction, row: { reminder: typeof reminder.$infe
 
 function resolveLeftovers(tx: Transaction, reminderId: number, kind: CallKind, now: number) {
   const left = and(eq(delivery.reminderId, reminderId), eq(delivery.status, 'sending'))
-  if (isUrgent(kind)) tx.update(delivery).set({ status: 'queued', nextTryAt: now, changedAt: now }).where(left).run()
+  if (callTraits[kind].urgent) tx.update(delivery).set({ status: 'queued', nextTryAt: now, changedAt: now }).where(left).run()
   else tx.update(delivery).set({ status: 'unknown', nextTryAt: null, changedAt: now, problem: callWords.delivery.stopped }).where(left).run()
 }
 

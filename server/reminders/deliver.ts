@@ -3,7 +3,7 @@ import { cause, delivery, member, person, reminder, studio, subscription } from 
 import type { Database, Transaction } from '~~/server/utils/database'
 import type { CallKind } from '#shared/terms'
 import { callWords } from '#shared/words/calls'
-import { isUrgent } from './claim'
+import { callTraits } from './kinds'
 import { heldUntil } from './quiet'
 import type { Channels, OutgoingCall, SendOutcome } from './types'
 
@@ -13,7 +13,7 @@ const waits = [1, 2, 4, 8, 15]
 /** How long to wait after the n-th try in vain, in ms: 1, 2, 4, 8, then 15 minutes; fire calls and last moments never over 2. */
 export function waitAfter(tries: number, kind: CallKind): number {
   const minutes = waits[Math.min(Math.max(tries, 1), waits.length) - 1] ?? 15
-  return Math.min(minutes, isUrgent(kind) ? 2 : 15) * minute
+  return Math.min(minutes, callTraits[kind].urgent ? 2 : 15) * minute
 }
 
 /** Sends what a held call still has to send, then lets go of it. */
@@ -39,7 +39,7 @@ function beginSending(db: Database, deliveryId: number, now: number): OutgoingCa
       .innerJoin(reminder, eq(delivery.reminderId, reminder.id)).innerJoin(cause, eq(reminder.causeId, cause.id)).innerJoin(studio, eq(delivery.studioId, studio.id))
       .where(and(eq(delivery.id, deliveryId), eq(delivery.status, 'queued'), eq(reminder.status, 'claimed'))).get()
     if (!row) return null
-    const quiet = heldUntil(tx, row.delivery.memberId, row.kind as CallKind, now)
+    const quiet = heldUntil(tx, row.delivery.memberId, row.kind, now)
     if (quiet !== null) {
       tx.update(delivery).set({ nextTryAt: quiet, changedAt: now, problem: callWords.delivery.quiet }).where(eq(delivery.id, deliveryId)).run()
       return null
@@ -51,7 +51,7 @@ function beginSending(db: Database, deliveryId: number, now: number): OutgoingCa
     }
     tx.update(delivery).set({ status: 'sending', tries: row.delivery.tries + 1, nextTryAt: null, changedAt: now }).where(eq(delivery.id, deliveryId)).run()
     const { title, body, path } = row.reminder
-    return { stableId: row.delivery.stableId, kind: row.kind as CallKind, title, body, path, studioName: row.studioName, to }
+    return { stableId: row.delivery.stableId, kind: row.kind, title, body, path, studioName: row.studioName, to }
   }, { behavior: 'immediate' })
 }
 
@@ -68,7 +68,7 @@ function recordOutcome(db: Database, deliveryId: number, kind: CallKind, outcome
   db.transaction((tx) => {
     const row = tx.select().from(delivery).where(eq(delivery.id, deliveryId)).get()
     if (!row) return
-    const again = outcome.kind === 'unreachable' || (outcome.kind === 'unresolved' && isUrgent(kind))
+    const again = outcome.kind === 'unreachable' || (outcome.kind === 'unresolved' && callTraits[kind].urgent)
     const asked = outcome.kind === 'unreachable' ? Math.min(outcome.retryAfterMs ?? 0, 60 * minute) : 0
     tx.update(delivery).set({
       status: statusAfter(outcome, again),

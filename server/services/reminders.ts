@@ -10,7 +10,6 @@ import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
 import type { DeliveryWire, OutboxWire, ReminderWire } from '#shared/schemas/telling'
 import { fireCallKinds } from '#shared/terms'
-import type { CallKind } from '#shared/terms'
 import { may } from '#shared/permissions'
 import { callWords } from '#shared/words/calls'
 
@@ -22,7 +21,7 @@ export function listOpenReminders(db: Database, studioId: number, { role }: Memb
   return db.select({ reminder, kind: cause.kind, subjectId: cause.subjectId }).from(reminder).innerJoin(cause, eq(reminder.causeId, cause.id))
     .where(scoped(reminder, studioId, inArray(reminder.status, ['claimed', 'sent']))).orderBy(desc(reminder.dueAt), desc(reminder.id)).all()
     .filter(row => role !== 'helper' || fireCallKinds.some(kind => kind === row.kind))
-    .map(({ reminder: { id, title, body, path, dueAt }, kind, subjectId }) => ({ id, kind: kind as CallKind, title, body, path, dueAt: iso(dueAt), ragDutyId: kind === 'rags' ? subjectId : null }))
+    .map(({ reminder: { id, title, body, path, dueAt }, kind, subjectId }) => ({ id, kind, title, body, path, dueAt: iso(dueAt), ragDutyId: kind === 'rags' ? subjectId : null }))
 }
 
 /** Takes an open call as answered for the whole studio. A call about rags wants to know where they are instead. */
