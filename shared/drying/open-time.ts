@@ -7,6 +7,11 @@ export function openDriver({ milestones }: Pick<DryingMaterial, 'milestones'>, m
   return (milestones.find(rung => minutes <= rung.typical) ?? milestones.at(-1))?.driver ?? null
 }
 
+/** Minutes from spreading glue to the last in which a joint can be moved: its open time, and its closed assembly where the sheet has one; null where the sheet gives no open time. */
+export function glueWorkMin(openMin: number | null, closedMin: number | null): number | null {
+  return openMin === null ? null : openMin + (closedMin ?? 0)
+}
+
 /**
  * How long spread glue can still be joined in some air, in minutes, from its sheet's minutes: on the clock of the rung they lie
  * within, as the ends of a recoat window are. Cold slows it and no more: what stops under its minimum temperature is its strength,

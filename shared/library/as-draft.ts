@@ -1,3 +1,4 @@
+import { glueWorkMin } from '#shared/drying/open-time'
 import { dryingMaterial, libraryFigure } from '#shared/library/types'
 import type { FigureName, LibraryMaterial, LibrarySchedule } from '#shared/library/types'
 import type { ScheduleMaterialWire } from '#shared/schemas/schedule'
@@ -9,13 +10,9 @@ export function librarySheets(materials: readonly LibraryMaterial[]): ReadonlyMa
     const figure = libraryFigure(material, name)
     return figure?.low ?? figure?.typical ?? null
   }
-  const workMin = (material: LibraryMaterial) => {
-    const open = least(material, 'open time')
-    return open === null ? null : open + (least(material, 'closed assembly') ?? 0)
-  }
   return new Map(materials.map((material, at) => [at + 1, {
     id: at + 1, name: material.name, kind: material.kind, glue: material.film === 'joint', solventBorne: !['water', 'none'].includes(material.solvent), drying: dryingMaterial(material),
-    recoveries: material.windows.map(({ recovery, recoveryMin }) => (recovery === null ? null : { name: recovery, minutes: recoveryMin })), cautions: [...material.cautions], workMin: workMin(material),
+    recoveries: material.windows.map(({ recovery, recoveryMin }) => (recovery === null ? null : { name: recovery, minutes: recoveryMin })), cautions: [...material.cautions], workMin: glueWorkMin(least(material, 'open time'), least(material, 'closed assembly')),
   }]))
 }
 

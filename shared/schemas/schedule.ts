@@ -59,7 +59,7 @@ export interface ScheduleWire {
 /** GET /api/schedules/7: the same with its steps and what each waits for. */
 export interface ScheduleDetailWire extends ScheduleWire { steps: ScheduleStepWire[], links: ScheduleLinkWire[] }
 
-/** A material as the editor needs it: enough to reckon a film in the browser. `recoveries` stand beside its windows, null where the sheet asks for none; `workMin`: least minutes from spreading glue to the last that a joint can be moved (open time, and closed assembly where the sheet has it), null where the sheet gives no open time. */
+/** A material as the editor needs it: enough to reckon a film in the browser. `recoveries` stand beside its windows, null where the sheet asks for none; `workMin`: `glueWorkMin` of the least that its sheet gives. */
 export interface ScheduleMaterialWire {
   id: number
   name: string

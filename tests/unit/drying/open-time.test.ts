@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { openDriver, openTimeAt } from '#shared/drying/open-time'
+import { glueWorkMin, openDriver, openTimeAt } from '#shared/drying/open-time'
 import { libraryMaterials } from '#shared/library/index'
 import { dryingMaterial } from '#shared/library/types'
 
@@ -33,6 +33,10 @@ describe('open time', () => {
     expect([openDriver(sheet('contact-water'), 30), openDriver(sheet('contact-water'), 120), openDriver(sheet('contact-water'), 99_999)]).toEqual(['water', 'joint', 'joint'])
     expect(openDriver({ milestones: [] }, 5)).toBeNull()
     expect(openTimeAt(5, { milestones: [], reference: { tempC: 20, rh: 0.5 } }, { tempC: 30, rh: 0.2 })).toBe(5)
+  })
+
+  it('leaves a joint to be moved as long as glue is open and closed assembly lasts', () => {
+    expect([glueWorkMin(4, 6), glueWorkMin(4, null), glueWorkMin(null, 6)]).toEqual([10, 4, null])
   })
 
   it('asks for minutes', () => {
