@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { adviceAnswer } from '~~/db/schema'
 import { answerAdvice } from '~~/server/services/advice/answer'
 import type { ActRequest } from '#shared/schemas/act'
+import type { CoatSize, Ground } from '#shared/terms'
 import type { AdviceCode } from '#shared/words/advice'
 import type { StartAdvice } from '#shared/words/advice-start'
 import type { Work } from '../../../helpers/advice-work'
@@ -14,201 +15,118 @@ interface Kind { says: RegExp, at?: number, about: 'coat' | 'turn', wrong(studio
 
 const five = now + 7 * hour
 
+/** The same scene twice: with what goes wrong, and with what does not. */
+function either<Given>(scene: (studio: Work, given: Given) => void, wrong: Given, tamed: Given): Pick<Kind, 'wrong' | 'tamed'> {
+  return { wrong: studio => scene(studio, wrong), tamed: studio => scene(studio, tamed) }
+}
+
+/** A coat of a material in air of so many °C and such a humidity. */
+const inAir = (material: string, kind: 'coat on' | 'glue-up on' = 'coat on') => (s: Work, [tempC, rh]: readonly [number, number]) => {
+  s.read(tempC, rh)
+  coated(s, material, now, {}, kind)
+}
+
+/** A coat put on at five in a room that the night cools by so much; 0 in one that is heated. */
+const overNight = (material: string, [tempC, rh]: readonly [number, number], kind: 'coat on' | 'glue-up on' = 'coat on') => (s: Work, nightDropC: number) => {
+  if (nightDropC > 0) s.unheated(nightDropC)
+  s.read(tempC, rh, five - hour)
+  coated(s, material, five, {}, kind)
+}
+
+/** A coat, and what somebody says of the air on it a while later; null where nobody says anything. */
+const withAir = (material: string, after: number) => (s: Work, body: ActRequest['body'] | null) => {
+  s.read(20, 0.5)
+  const ids = coated(s, material)
+  if (body) s.tell('air', ids, body, now + after)
+}
+
 const kinds: Record<AdviceCode | StartAdvice['code'], Kind> = {
-  'air-assumed': { about: 'coat', says: /^Nobody has read the air here/, wrong: s => coated(s, 'wax'), tamed: (s) => {
-    s.read(20, 0.5)
+  'air-assumed': { about: 'coat', says: /^Nobody has read the air here/, ...either((s, isRead: boolean) => {
+    if (isRead) s.read(20, 0.5)
     coated(s, 'wax')
-  },
-  },
+  }, false, true) },
   'dew-margin': {
     // 14 C at 75 % has its dew point at 9.6 C: a night drop of 6 brings the room within 3 degrees of it in the evening.
     about: 'coat', at: five, says: /^Less than 3 °C above the dew point from [\d:]+: bring it in by then\.$/,
-    wrong: (s) => {
-      s.unheated(6)
-      s.read(14, 0.75, five - hour)
-      coated(s, 'alkyd-enamel', five)
-    },
-    tamed: (s) => {
-      s.read(14, 0.75, five - hour)
-      coated(s, 'alkyd-enamel', five)
-    },
+    ...either(overNight('alkyd-enamel', [14, 0.75]), 6, 0),
   },
   'below-minimum-ahead': {
-    // Boiled oil asks for 5 C or more: 9 C at five less a drop of 8 is under it before morning.
+    // The enamel asks for 5 C or more: 11 C at five less a drop of 8 is under it before morning.
     about: 'coat', at: five, says: /^The room falls under \d+ °C at .*\d\d:\d\d, while this is still wet: bring it in by then\.$/,
-    wrong: (s) => {
-      s.unheated(8)
-      s.read(11, 0.4, five - hour)
-      coated(s, 'alkyd-enamel', five)
-    },
-    tamed: (s) => {
-      s.read(11, 0.4, five - hour)
-      coated(s, 'alkyd-enamel', five)
-    },
+    ...either(overNight('alkyd-enamel', [11, 0.4]), 8, 0),
   },
   'chilled': {
     about: 'turn', says: /^The room is under \d+ °C, the least for this: warm it first/,
-    wrong: (s) => {
-      s.read(6, 0.6)
+    ...either((s, [tempC, rh]: readonly [number, number]) => {
+      s.read(tempC, rh)
       s.start('painted-waxed-box')
-    },
-    tamed: (s) => {
-      s.read(20, 0.5)
-      s.start('painted-waxed-box')
-    },
+    }, [6, 0.6], [20, 0.5]),
   },
   'cold-before-strength': {
     about: 'coat', at: five, says: /^The room falls under .* before the joint has its strength: glue that cold dries weak\./,
-    wrong: (s) => {
-      s.unheated(6)
-      s.read(14, 0.4, five - hour)
-      coated(s, 'pva-yellow', five, {}, 'glue-up on')
-    },
-    tamed: (s) => {
-      s.read(14, 0.4, five - hour)
-      coated(s, 'pva-yellow', five, {}, 'glue-up on')
-    },
+    ...either(overNight('pva-yellow', [14, 0.4], 'glue-up on'), 6, 0),
   },
   'too-damp': {
     about: 'coat', says: /^At 75 % humidity or more no time is promised: dry the room, or warm it to \d+ °C, to get under it\.$/,
-    wrong: (s) => {
-      s.read(18, 0.8)
-      coated(s, 'craft-acrylic')
-    },
-    tamed: (s) => {
-      s.read(18, 0.6)
-      coated(s, 'craft-acrylic')
-    },
+    ...either(inAir('craft-acrylic'), [18, 0.8], [18, 0.6]),
   },
   'dry-air': {
     // 12 C at 30 % holds 2.6 g of water in a kilogram of air.
     about: 'coat', says: /^The air holds less than 5.8 g of water in a kilogram/,
-    wrong: (s) => {
-      s.read(12, 0.3)
-      coated(s, 'cyanoacrylate', now, {}, 'glue-up on')
-    },
-    tamed: (s) => {
-      s.read(21, 0.5)
-      coated(s, 'cyanoacrylate', now, {}, 'glue-up on')
-    },
+    ...either(inAir('cyanoacrylate', 'glue-up on'), [12, 0.3], [21, 0.5]),
   },
   'blush': {
     about: 'coat', says: /^The air is 6.8 °C above its dew point; under 11.1 °C such a film may haze\./,
-    wrong: (s) => {
-      s.read(20, 0.65)
-      coated(s, 'shellac')
-    },
-    tamed: (s) => {
-      s.read(20, 0.45)
-      coated(s, 'shellac')
-    },
+    ...either(inAir('shellac'), [20, 0.65], [20, 0.45]),
   },
   'outside-measured': {
     // A flood coat is 2.5 times a normal one, a sealed ground 1.8 times slower.
     about: 'coat', says: /^This coat is 4.5 times slower than the sheet’s/,
-    wrong: (s) => {
+    ...either((s, how: { size: CoatSize, ground: Ground }) => {
       s.read(20, 0.5)
-      coated(s, 'craft-acrylic', now, { size: 'flood', ground: 'sealed' })
-    },
-    tamed: (s) => {
-      s.read(20, 0.5)
-      coated(s, 'craft-acrylic', now, { size: 'normal', ground: 'primed' })
-    },
+      coated(s, 'craft-acrylic', now, how)
+    }, { size: 'flood', ground: 'sealed' }, { size: 'normal', ground: 'primed' }),
   },
   'outside-sheet': {
     about: 'coat', at: now + 6 * day, says: /^Over three times the longest on the sheet/,
-    wrong: (s) => {
+    ...either((s, reached: boolean) => {
       s.read(20, 0.5)
-      const ids = coated(s, 'craft-acrylic')
-      s.tell('touch test', ids, { milestone: 'dry-to-handle', reached: false,
-      },
-      now + 5 * day)
-    },
-    tamed: (s) => {
-      s.read(20, 0.5)
-      const ids = coated(s, 'craft-acrylic')
-      s.tell('touch test', ids, { milestone: 'dry-to-handle', reached: true,
-      },
-      now + 5 * day)
-    },
+      s.tell('touch test', coated(s, 'craft-acrylic'), { milestone: 'dry-to-handle', reached }, now + 5 * day)
+    }, false, true),
   },
   'fan-early': {
     about: 'coat', at: now + 5 * minute, says: /^Keep the fan off until it is tack-free/,
-    wrong: (s) => {
-      s.read(20, 0.5)
-      const ids = coated(s, 'water-polyurethane')
-      s.tell('air', ids, { kind: 'moving', minutes: null,
-      },
-      now + minute)
-    }, tamed: (s) => {
-      s.read(20, 0.5)
-      coated(s, 'water-polyurethane')
-    },
+    ...either(withAir('water-polyurethane', minute), { kind: 'moving', minutes: null }, null),
   },
   'forced-drying': {
     about: 'coat', at: now + 5 * minute, says: /^Sun or warm air on it: the times are less sure, and nothing is learned from this coat\.$/,
-    wrong: (s) => {
-      s.read(20, 0.5)
-      const ids = coated(s, 'craft-acrylic')
-      s.tell('air', ids, { kind: 'sun', minutes: null,
-      },
-      now + minute)
-    }, tamed: (s) => {
-      s.read(20, 0.5)
-      coated(s, 'craft-acrylic')
-    },
+    ...either(withAir('craft-acrylic', minute), { kind: 'sun', minutes: null }, null),
   },
   'covered-early': {
     about: 'coat', at: now + 2 * hour, says: /^It takes air to harden: do not cover it before Thu 10:00, two days after it went on\.$/,
-    wrong: (s) => {
-      s.read(20, 0.5)
-      const ids = coated(s, 'boiled-linseed-oil')
-      s.tell('air', ids, { kind: 'covered', minutes: null,
-      },
-      now + hour)
-    }, tamed: (s) => {
-      s.read(20, 0.5)
-      coated(s, 'boiled-linseed-oil')
-    },
+    ...either(withAir('boiled-linseed-oil', hour), { kind: 'covered', minutes: null }, null),
   },
   'over-too-early': {
     about: 'turn', at: now + 60 * hour, says: /^Water-based over oil-based: wait three days\. The film beneath went on Tue 10:00: not before Fri 10:00\.$/,
-    wrong: (s) => {
-      s.read(20, 0.5)
-      coated(s, 'boiled-linseed-oil')
-    },
-    tamed: (s) => {
-      s.read(20, 0.5)
-      coated(s, 'shellac')
-    },
+    ...either((s, beneath: string) => inAir(beneath)(s, [20, 0.5]), 'boiled-linseed-oil', 'shellac'),
   },
   'over-better-later': {
     // Acrylic paint on gesso: an hour at least, overnight (eight hours) is better. The painted ground of a case is next.
     about: 'turn', at: now + 2 * hour, says: /Overnight is better\. The film beneath went on 10:00: better from 18:00\.$/,
-    wrong: (s) => {
-      s.read(20, 0.5)
-      onBook(s, 'acrylic-gesso')
-    },
-    tamed: (s) => {
-      s.read(20, 0.5)
-      onBook(s, null)
-    },
+    ...either(onBook, 'acrylic-gesso', null),
   },
   'never-over': {
     about: 'turn', says: /^Nothing sticks on top of wax\. Strip the film beneath/,
-    wrong: (s) => {
+    ...either((s, isWaxed: boolean) => {
       s.read(20, 0.5)
-      coated(s, 'wax')
-    },
-    tamed: (s) => {
-      s.read(20, 0.5)
-      s.start('painted-waxed-box')
-    },
+      if (isWaxed) coated(s, 'wax')
+      else s.start('painted-waxed-box')
+    }, true, false),
   },
   'acclimatise': {
     // Three weeks at 85 % in the spray room, then glued at once at 40 %.
     about: 'turn', says: /^Wood and board here come to rest at 7\.\d % moisture; these are near 1\d\.\d %, from where they lay\. Let them lie here till Sat 18 Apr, or the joint is strained/,
-    wrong: s => joint(s, 0.85), tamed: s => joint(s, 0.42),
+    ...either(joint, 0.85, 0.42),
   },
   'still-air': {
     about: 'turn', says: /^Somebody said that the air moves here: leaf wants it still\.$/,
@@ -217,7 +135,7 @@ const kinds: Record<AdviceCode | StartAdvice['code'], Kind> = {
   'pot-life': {
     // A rise of 10 C halves it: 10.5 min at 22 C is about 5 at 32 C.
     about: 'turn', says: /^At 32 °C what is mixed lasts about 5 min; the sheet says 11\. A deep pot goes off sooner: mix less\.$/,
-    wrong: s => resin(s, 32), tamed: s => resin(s, 22),
+    ...either(resin, 32, 22),
   },
   'several-mixes': {
     // 9 min at the least at 22 C: one tray of 6 minutes, not two.
@@ -231,7 +149,7 @@ const kinds: Record<AdviceCode | StartAdvice['code'], Kind> = {
   },
   'pack-early': {
     about: 'turn', at: now + 40 * hour, says: /^Wrapped before 10:00 it may print/,
-    wrong: s => packed(s, now), tamed: s => packed(s, now - 9 * hour),
+    ...either(packed, now, now - 9 * hour),
   },
 }
 
@@ -247,6 +165,7 @@ function joint(s: Work, rh: number) {
 
 /** A book's case, about to get its painted ground, perhaps over a coat of something. */
 function onBook(s: Work, under: string | null) {
+  s.read(20, 0.5)
   const ids = s.start('cased-book')
   s.leaveAllBut('cased-book', ids, ['colour'])
   if (under !== null) s.tell('coat on', ids, { step: null, materialVersionId: s.materialOf(under) })
