@@ -1,4 +1,5 @@
 import type { StudioProblem } from '~~/server/planning/problem'
+import { activityId } from '~~/server/planning/ids'
 import { busyOf, overlaps } from '#shared/planning/occupied'
 import type { Activity, Conflict, Plan, PlanEntry, PlanProblem } from '#shared/planning/types'
 import { planWords } from '#shared/words/plan'
@@ -56,4 +57,4 @@ function anyMinute(from: number, to: number, holds: (at: number) => boolean): bo
 
 const enough = ({ choices }: Activity, holds: (hand: string) => boolean) => choices.every(({ of, count }) => of.filter(holds).length >= count)
 
-const stepOf = (activity: string, given: StudioProblem) => given.works.find(work => work.turns.some(turn => `t${turn.id}` === activity))?.step.name ?? ''
+const stepOf = (activity: string, given: StudioProblem) => given.works.find(work => work.turns.some(turn => activityId(turn.id) === activity))?.step.name ?? ''

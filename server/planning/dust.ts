@@ -1,5 +1,5 @@
 import type { PlanFacts } from '~~/server/planning/facts'
-import { activityId } from '~~/server/planning/lags'
+import { activityId } from '~~/server/planning/ids'
 import type { LagInput, StepWork } from '~~/server/planning/lags'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { minutesFrom, reachedAt, rungFor } from '#shared/drying/waits'

@@ -1,4 +1,5 @@
 import type { PlanFacts } from '~~/server/planning/facts'
+import { handsId } from '~~/server/planning/ids'
 import { openSpans } from '#shared/open-hours'
 import { mayDoStep } from '#shared/permissions'
 import type { Interval } from '#shared/planning/types'
@@ -9,8 +10,6 @@ const minute = 60_000
 
 /** A pair of hands: a member in their own hours, or in the studio's where they keep none of their own. Minutes from `zeroAt`. */
 export interface Hands { id: string, memberId: number, open: Interval[], may: (kind: StepKind) => boolean }
-
-export const handsId = (memberId: number) => `m${memberId}`
 
 /** Everybody who can do steps, with when they work between two instants (ms UTC). */
 export function handsOf(facts: PlanFacts, zone: StudioZone, zeroAt: number, untilAt: number): Hands[] {

@@ -1,6 +1,7 @@
 import type { WaitsToCome } from '~~/server/planning/waits'
 import type { FactIndex } from '~~/server/planning/fact-index'
 import type { PlanFacts } from '~~/server/planning/facts'
+import { activityId } from '~~/server/planning/ids'
 import { metAt, minutesFrom } from '#shared/drying/waits'
 import type { PlanInput } from '#shared/planning/problem'
 import type { LagWindow, Recovery } from '#shared/planning/types'
@@ -17,8 +18,6 @@ export type LagInput = NonNullable<PlanInput['lags']>[number] & { film?: LagFilm
 const missed = 1
 /** Coats of a later day of a round wait at least a night (planning value). */
 const aNight = 12 * 60
-
-export const activityId = (turnId: number) => `t${turnId}`
 
 export interface StepWork { step: Step, turns: TurnRow[], roomId: number | null }
 

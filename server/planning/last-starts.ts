@@ -1,6 +1,7 @@
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { StudioProblem } from '~~/server/planning/problem'
 import { handsOf } from '~~/server/planning/hands'
+import { activityId } from '~~/server/planning/ids'
 import { minutesFrom } from '#shared/drying/waits'
 import { lastStart } from '#shared/planning/lastStart'
 import type { LastStart } from '#shared/planning/lastStart'
@@ -21,7 +22,7 @@ export interface LastStarts { lastStart: number | null, firstFew: number | null,
  */
 export function lastStartsOf(plan: Plan, given: StudioProblem, facts: PlanFacts, nowMinute: number): Map<string, LastStarts> {
   const shuts = shutsOf(given, facts)
-  const works = new Map<string, StudioProblem['works'][number]>(given.works.flatMap(work => work.turns.map(turn => [`t${turn.id}`, work] as const)))
+  const works = new Map<string, StudioProblem['works'][number]>(given.works.flatMap(work => work.turns.map(turn => [activityId(turn.id), work] as const)))
   const open = hoursOfAnybody(given, facts, Math.max(0, ...[...shuts.values()].map(each => each.shuts)))
   const groups = new Map<string, string[]>()
   for (const entry of plan.entries) {
@@ -69,10 +70,10 @@ function shutsOf(given: StudioProblem, facts: PlanFacts): Map<string, LastWindow
       const ends = facts.windows.filter(each => each.coatId === film?.coatId)
       const last = ends.reduce<number | null | undefined>((end, each) => (end === null || each.shutsAt === null ? null : Math.max(end ?? -Infinity, each.shutsAt)), undefined)
       if (typeof last !== 'number') continue
-      const known = found.get(`t${first.id}`)
+      const known = found.get(activityId(first.id))
       // Two films beneath must both be open, and the first to shut shuts for both.
       const opened = [known?.opens ?? null, firstOpening(ends, given.zeroAt)].filter(each => each !== null)
-      found.set(`t${first.id}`, { opens: opened.length === 0 ? null : Math.max(...opened), shuts: Math.min(known?.shuts ?? Infinity, minutesFrom(given.zeroAt, last, Math.floor)) })
+      found.set(activityId(first.id), { opens: opened.length === 0 ? null : Math.max(...opened), shuts: Math.min(known?.shuts ?? Infinity, minutesFrom(given.zeroAt, last, Math.floor)) })
     }
   }
   return found

@@ -1,6 +1,6 @@
 import { dustKeptOff } from '~~/server/planning/dust'
 import type { PlanFacts } from '~~/server/planning/facts'
-import { activityId } from '~~/server/planning/lags'
+import { activityId, memberIdOf, turnIdOf } from '~~/server/planning/ids'
 import type { StepWork } from '~~/server/planning/lags'
 import type { StudioProblem } from '~~/server/planning/problem'
 import { keptOut } from '~~/server/planning/vapour'
@@ -95,7 +95,7 @@ export class MoveCauses {
 
   /** What became of the step before; null where it lies where it lay, so that only the wait after it can have grown. */
   private before(id: string, depth: number): MoveCause | null {
-    const turnId = Number(id.slice(1))
+    const turnId = turnIdOf(id)
     const [work, entry, was] = [this.works.get(id), this.entries.get(id), this.last.get(turnId)]
     if (!work || !entry) return null
     const step = work.step.name
@@ -133,7 +133,7 @@ export class MoveCauses {
     for (const { of, count } of activity.choices) {
       const end = was + (activity.mayRunOver ? 1 : entry.end - entry.start)
       const there = of.filter(hand => given.hands.find(each => each.id === hand)?.open.some(([from, to]) => was >= from && end <= to))
-      if (there.length < count) return { code: 'hours', name: of.length === 1 ? names.get(Number(of[0]?.slice(1))) ?? null : null }
+      if (there.length < count) return { code: 'hours', name: of.length === 1 ? names.get(memberIdOf(of[0] ?? '')) ?? null : null }
       const taken = there.map(hand => ({ hand, by: (this.busy.get(hand) ?? []).filter(each => !each.activities.includes(id) && overlaps(each, was, end)) }))
       const free = taken.filter(each => each.by.length === 0).length
       if (free >= count) continue
@@ -148,7 +148,7 @@ export class MoveCauses {
   private taker(hand: string, { activities }: Busy) {
     const work = this.works.get(activities[0] ?? '')
     const piece = work && this.batchOf(work)
-    return work && piece ? [{ memberId: Number(hand.slice(1)), step: work.step.name, batch: piece.batch, batchId: piece.batchId, added: !this.knownBatches.has(piece.batchId) }] : []
+    return work && piece ? [{ memberId: memberIdOf(hand), step: work.step.name, batch: piece.batch, batchId: piece.batchId, added: !this.knownBatches.has(piece.batchId) }] : []
   }
 
   /** Where it will rest was full at its old time. */
@@ -185,7 +185,7 @@ export class MoveCauses {
     const ready = this.compared.ready.get(spot.id)
     if (!ready || spot.wasReady === null || spot.is >= spot.wasReady - slack || ready.at >= spot.wasReady - slack) return null
     const before = ready.lag.from === null ? undefined : this.entries.get(ready.lag.from)
-    const was = before && this.last.get(Number(before.activity.slice(1)))
+    const was = before && this.last.get(turnIdOf(before.activity))
     if (before && was && before.start < this.minutes(was.startsAt) - slack) return { code: 'follows', step: this.works.get(before.activity)?.step.name ?? '', startsAt: this.instant(before.start), because: null }
     return this.film('film sooner', spot, ready.at)
   }
@@ -196,7 +196,7 @@ export class MoveCauses {
     const choice = activity.choices[0]
     if (!choice) return null
     const [from, to] = [this.instant(is), this.instant(is + entry.end - entry.start)]
-    const taken = choice.of.map(hand => facts.last.find(each => each.memberId === Number(hand.slice(1)) && each.turnId !== turnId && each.startsAt < to && each.endsAt > from))
+    const taken = choice.of.map(hand => facts.last.find(each => each.memberId === memberIdOf(hand) && each.turnId !== turnId && each.startsAt < to && each.endsAt > from))
     if (taken.filter(each => each === undefined).length >= choice.count) return null
     for (const each of taken) {
       const work = each && this.works.get(activityId(each.turnId))

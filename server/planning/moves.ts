@@ -1,4 +1,5 @@
 import type { PlanFacts } from '~~/server/planning/facts'
+import { turnIdOf } from '~~/server/planning/ids'
 import { MoveCauses } from '~~/server/planning/move-causes'
 import type { StudioProblem } from '~~/server/planning/problem'
 import type { WaitsToCome } from '~~/server/planning/waits'
@@ -23,7 +24,7 @@ export interface Moves { moves: TurnMove[], toldAt: Map<number, number>, readyAt
  */
 export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCome: WaitsToCome, names: ReadonlyMap<number, string>, now: number): Moves {
   const ready = readyTimes(given.problem, made)
-  const found: Moves = { moves: [], toldAt: new Map(), readyAt: new Map([...ready].map(([id, { at }]) => [Number(id.slice(1)), given.zeroAt + at * minute])) }
+  const found: Moves = { moves: [], toldAt: new Map(), readyAt: new Map([...ready].map(([id, { at }]) => [turnIdOf(id), given.zeroAt + at * minute])) }
   const causes = new MoveCauses({ facts, given, made, toCome, names, now, ready })
   const last = new Map(facts.last.map(entry => [entry.turnId, entry]))
   const told = new Map(facts.lastChanges.map(change => [change.turnId, change]))
@@ -33,7 +34,7 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
   const tills = new Map([...new Set(facts.lastChanges.flatMap(change => change.movedAt ?? []))].map(movedAt => [movedAt, toldTill(movedAt, hours, zone)]))
   const waiting = new Set(facts.turns.filter(turn => turn.status === 'waiting').map(turn => turn.id))
   for (const entry of made.entries) {
-    const turnId = Number(entry.activity.slice(1))
+    const turnId = turnIdOf(entry.activity)
     const isAt = given.zeroAt + entry.start * minute
     const was = last.get(turnId)
     found.toldAt.set(turnId, isAt)

@@ -1,5 +1,5 @@
 import type { PlanFacts } from '~~/server/planning/facts'
-import { activityId } from '~~/server/planning/lags'
+import { activityId, memberIdOf } from '~~/server/planning/ids'
 import type { StepWork } from '~~/server/planning/lags'
 import { familyOf } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
@@ -43,7 +43,7 @@ export function pinClash(studio: PinStudio, wanted: readonly Wanted[]): string |
   return null
 }
 
-const nameOf = ({ names }: PinStudio, hand: string) => names.get(Number(hand.slice(1))) ?? ''
+const nameOf = ({ names }: PinStudio, hand: string) => names.get(memberIdOf(hand)) ?? ''
 const instant = ({ given }: PinStudio, minutes: number) => given.zeroAt + minutes * minute
 
 function hoursClash(studio: PinStudio, { start, from, till, hands }: Held, { step }: StepWork): string | null {

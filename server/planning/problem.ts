@@ -1,8 +1,9 @@
-import { handsId, handsOf } from '~~/server/planning/hands'
+import { handsOf } from '~~/server/planning/hands'
 import type { Hands } from '~~/server/planning/hands'
 import { indexOf } from '~~/server/planning/fact-index'
 import type { PlanFacts } from '~~/server/planning/facts'
-import { activityId, lagsOf } from '~~/server/planning/lags'
+import { activityId, handsId, turnIdOf } from '~~/server/planning/ids'
+import { lagsOf } from '~~/server/planning/lags'
 import type { LagFilm, LagInput, StepWork } from '~~/server/planning/lags'
 import { dustApart, dustKeptOff } from '~~/server/planning/dust'
 import { openWithout, reservedFor } from '~~/server/planning/reserved'
@@ -86,12 +87,10 @@ function follow(unreachable: Set<number>, works: readonly StepWork[], lags: read
   const out = new Set(unreachable)
   for (const { step, turns } of works) if (step.hands > hands.filter(each => each.may(step.kind)).length) for (const turn of turns) out.add(turn.id)
   if (out.size === 0) return out
-  const after = grouped(lags, lag => turnOf(lag.from))
-  for (const turn of out) for (const lag of after.get(turn) ?? []) out.add(turnOf(lag.to) ?? turn)
+  const after = grouped(lags, lag => (lag.from ? turnIdOf(lag.from) : null))
+  for (const turn of out) for (const lag of after.get(turn) ?? []) out.add(turnIdOf(lag.to))
   return out
 }
-
-const turnOf = (id: string | null | undefined) => (id ? Number(id.slice(1)) : null)
 
 /** In a shut room only its equipped operator goes on with the same solvent work. */
 function handsFor(work: StepWork, facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[]): readonly Hands[] {

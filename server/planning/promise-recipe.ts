@@ -1,6 +1,6 @@
 import { FilmCurves, lyingRung, lyingWindow } from '~~/server/planning/film-curves'
 import type { PlanFacts } from '~~/server/planning/facts'
-import { activityId } from '~~/server/planning/lags'
+import { activityId } from '~~/server/planning/ids'
 import type { LagFilm, StepWork } from '~~/server/planning/lags'
 import type { StudioProblem } from '~~/server/planning/problem'
 import type { WaitsToCome } from '~~/server/planning/waits'

@@ -1,5 +1,5 @@
 import type { StepWork } from '~~/server/planning/lags'
-import { activityId } from '~~/server/planning/lags'
+import { activityId } from '~~/server/planning/ids'
 import { grouped } from '#shared/grouped'
 import type { Fixed, Interval } from '#shared/planning/types'
 

@@ -5,6 +5,7 @@ import type { PlanFacts } from '~~/server/planning/facts'
 import { familyOf } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
 import { holdsOf } from '~~/server/planning/holds'
+import { memberIdOf, turnIdOf } from '~~/server/planning/ids'
 import type { LastStarts } from '~~/server/planning/last-starts'
 import type { Moves } from '~~/server/planning/moves'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -36,11 +37,11 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
   const sessionIds = partsOf(sessions).flatMap(part => tx.insert(planSession).values(part).returning({ id: planSession.id }).all()).map(row => row.id).sort((a, b) => a - b)
   const due = silentStarts(facts, now)
   const rows = made.entries.map((entry): typeof planEntry.$inferInsert => {
-    const turnId = Number(entry.activity.slice(1))
+    const turnId = turnIdOf(entry.activity)
     const startsAt = given.zeroAt + entry.start * minute
     const last = lastStarts.get(entry.activity)
     return {
-      studioId, planId, turnId, sessionId: entry.session === null ? null : sessionIds[entry.session] ?? null, memberId: entry.resources[0] ? Number(entry.resources[0].slice(1)) : null,
+      studioId, planId, turnId, sessionId: entry.session === null ? null : sessionIds[entry.session] ?? null, memberId: entry.resources[0] ? memberIdOf(entry.resources[0]) : null,
       startsAt, endsAt: given.zeroAt + entry.end * minute, dueAt: due.get(turnId) ?? startsAt,
       lastStartAt: at(last?.lastStart ?? null), firstFew: last?.firstFew ?? null, lastStartFewAt: at(last?.lastStartFew ?? null), afterTest: given.untested.has(turnId),
       readyAt: moves.readyAt.get(turnId) ?? null, toldAt: moves.toldAt.get(turnId) ?? null,

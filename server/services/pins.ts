@@ -3,8 +3,7 @@ import { pin, turn } from '~~/db/schema'
 import { clashSentences } from '~~/server/planning/clashes'
 import { readPlanFacts } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
-import { handsId } from '~~/server/planning/hands'
-import { activityId } from '~~/server/planning/lags'
+import { activityId, handsId, memberIdOf } from '~~/server/planning/ids'
 import { pinClash } from '~~/server/planning/pin-check'
 import type { PinStudio, Wanted } from '~~/server/planning/pin-check'
 import { studioProblem } from '~~/server/planning/problem'
@@ -93,8 +92,9 @@ function wishes({ facts, given }: PinStudio, { turnIds, memberId }: PinBody, sta
     const activity = given.problem.activities.find(each => each.id === activityId(turnId))
     if (!activity) return null
     const wish = memberId ?? last.get(turnId)?.memberId ?? null
+    const wished = wish === null ? null : handsId(wish)
     const able = activity.choices[0]?.of ?? []
-    const hands = [...able].sort((a, b) => Number(b === `m${wish}`) - Number(a === `m${wish}`)).slice(0, activity.choices[0]?.count ?? 0)
+    const hands = [...able].sort((a, b) => Number(b === wished) - Number(a === wished)).slice(0, activity.choices[0]?.count ?? 0)
     const each = { turnId, start, end: start + activity.minutes, hands }
     start = each.end
     return each
@@ -113,7 +113,7 @@ async function trialClash({ facts, given, toCome, clock: { now } }: PinStudio, w
   return clashSentences(after.plan, pinned).find(each => !known.has(each)) ?? null
 }
 
-const memberOf = (hands: readonly string[]) => (hands[0] ? Number(hands[0].slice(1)) : null)
+const memberOf = (hands: readonly string[]) => (hands[0] ? memberIdOf(hands[0]) : null)
 
 /** Lets turns go again that were pinned together with this one. */
 export function unpin(db: Database, studioId: number, id: number): { ok: true } | Refusal {
