@@ -13,7 +13,7 @@ await runUpkeep(() => {
   const db = openDatabase(config.databaseFile)
   try {
     const asked = askReset(db, address.trim().toLowerCase(), Date.now())
-    if (!asked) throw new Refused(`Nobody signs in with ${address}.`)
+    if (!asked) throw new Refused(`Nobody signs in with ${address} whose password can be chosen anew. The demo’s people keep theirs.`)
     return `${config.publicUrl ?? ''}/reset/${asked.token}`
   }
   finally {
