@@ -11,7 +11,8 @@ import { asSentence } from '#shared/words/verdict'
 export interface PlannedTurn {
   turnId: number
   sessionId: number | null
-  memberId: number | null
+  /** Whose hands it takes. */
+  memberIds: number[]
   step: string
   kind: StepKind
   /** A check's or release's own name; null for the step's work itself. */
@@ -37,7 +38,7 @@ const title = (what: string, names: readonly string[]) => `${asSentence(what).sl
 export function workEntries(turns: readonly PlannedTurn[], memberId: number | null, clock: Clock): CalendarEntry[] {
   const sessions = new Map<string, PlannedTurn[]>()
   for (const turn of turns) {
-    if (memberId !== null && turn.memberId !== memberId) continue
+    if (memberId !== null && !turn.memberIds.includes(memberId)) continue
     const key = turn.sessionId === null ? `turn ${turn.turnId}` : `session ${turn.sessionId}`
     sessions.set(key, [...sessions.get(key) ?? [], turn])
   }

@@ -94,6 +94,14 @@ export const planEntry = sqliteTable('plan_entry', {
   check('plan_entry_span', sql`${t.startsAt} <= ${t.endsAt}`), index('plan_entry_when').on(t.planId, t.startsAt),
 ])
 
+/** Whose hands a planned turn takes beside those of its entry's member: it wants several at once. */
+export const planMate = sqliteTable('plan_mate', {
+  studioId: studioColumn(),
+  planId: integer('plan_id').notNull(),
+  turnId: integer('turn_id').notNull(),
+  memberId: integer('member_id').notNull(),
+}, t => [primaryKey({ columns: [t.planId, t.turnId, t.memberId] }), belongsTo(t, t.planId, plan), belongsTo(t, t.turnId, turn), belongsTo(t, t.memberId, member)])
+
 /** Where the plan lets a part lie, and for how long; what finds no single place has no row. */
 export const planHold = sqliteTable('plan_hold', {
   id: id(),

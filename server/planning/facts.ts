@@ -1,8 +1,9 @@
 import { and, asc, eq, isNull, sql } from 'drizzle-orm'
-import { batch, closure, coat, member, memberStepKind, openHours, order, part, piece, pieceStep, pin, place, plan, planChange, planEntry, planHold, prediction, recoatWindow, stay, stepLink, stepTarget, studio, turn, windowPrediction } from '~~/db/schema'
+import { batch, closure, coat, member, memberStepKind, openHours, order, part, piece, pieceStep, pin, place, plan, planChange, planEntry, planHold, planMate, prediction, recoatWindow, stay, stepLink, stepTarget, studio, turn, windowPrediction } from '~~/db/schema'
 import { readVapourRooms } from '~~/server/planning/vapour'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { grouped } from '#shared/grouped'
 
 /** Statuses of steps that a plan has to do with. */
 const open = ['waiting', 'doing', 'resting'] as const
@@ -47,8 +48,10 @@ function readHands(db: Database, studioId: number) {
 }
 
 function readLast(db: Database, studioId: number) {
-  const last = db.select({ entry: planEntry }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).where(scoped(plan, studioId, sql`${plan.current} = 1`)).all().map(row => row.entry)
   const inForce = scoped(plan, studioId, sql`${plan.current} = 1`)
+  const mates = grouped(db.select({ mate: planMate }).from(plan).innerJoin(planMate, eq(planMate.planId, plan.id)).where(inForce).all(), ({ mate }) => mate.turnId)
+  const last = db.select({ entry: planEntry }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).where(inForce).all()
+    .map(({ entry }) => ({ ...entry, memberIds: [...entry.memberId === null ? [] : [entry.memberId], ...(mates.get(entry.turnId) ?? []).map(({ mate }) => mate.memberId)] }))
   const lastChanges = db.select({ change: planChange }).from(plan).innerJoin(planChange, eq(planChange.planId, plan.id)).where(inForce).all().map(row => row.change)
   const lastHolds = db.select({ hold: planHold }).from(plan).innerJoin(planHold, eq(planHold.planId, plan.id)).where(inForce).all().map(row => row.hold)
   const pins = db.select().from(pin).where(scoped(pin, studioId)).all()

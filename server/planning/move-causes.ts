@@ -196,7 +196,7 @@ export class MoveCauses {
     const choice = activity.choices[0]
     if (!choice) return null
     const [from, to] = [this.instant(is), this.instant(is + entry.end - entry.start)]
-    const taken = choice.of.map(hand => facts.last.find(each => each.memberId === memberIdOf(hand) && each.turnId !== turnId && each.startsAt < to && each.endsAt > from))
+    const taken = choice.of.map(hand => facts.last.find(each => each.memberIds.includes(memberIdOf(hand)) && each.turnId !== turnId && each.startsAt < to && each.endsAt > from))
     if (taken.filter(each => each === undefined).length >= choice.count) return null
     for (const each of taken) {
       const work = each && this.works.get(activityId(each.turnId))

@@ -60,7 +60,7 @@ export function studioProblem(facts: PlanFacts, toCome: WaitsToCome, now: number
     fixed,
     horizon: horizonDays * 24 * 60,
     previous: Object.fromEntries(last.map(entry => [activityId(entry.turnId), minutesFrom(zeroAt, entry.startsAt, Math.round)])),
-    previousResources: Object.fromEntries(last.flatMap(entry => (entry.memberId === null ? [] : [[activityId(entry.turnId), [handsId(entry.memberId)]]]))),
+    previousResources: Object.fromEntries(last.flatMap(entry => (entry.memberIds.length === 0 ? [] : [[activityId(entry.turnId), entry.memberIds.map(handsId)]]))),
   }
   // A plan that nobody has heard of is a beginning, not a promise.
   const isHeard = facts.last.some(entry => entry.toldAt !== null)

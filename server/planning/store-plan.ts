@@ -1,5 +1,5 @@
 import { eq, sql } from 'drizzle-orm'
-import { plan as planTable, planChange, planEntry, planHold, planSession } from '~~/db/schema'
+import { plan as planTable, planChange, planEntry, planHold, planMate, planSession } from '~~/db/schema'
 import { clashSentences } from '~~/server/planning/clashes'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { familyOf } from '~~/server/planning/problem'
@@ -41,17 +41,22 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
     const startsAt = given.zeroAt + entry.start * minute
     const last = lastStarts.get(entry.activity)
     return {
-      studioId, planId, turnId, sessionId: entry.session === null ? null : sessionIds[entry.session] ?? null, memberId: entry.resources[0] ? memberIdOf(entry.resources[0]) : null,
+      studioId, planId, turnId, sessionId: entry.session === null ? null : sessionIds[entry.session] ?? null, memberId: membersOf(entry)[0] ?? null,
       startsAt, endsAt: given.zeroAt + entry.end * minute, dueAt: due.get(turnId) ?? startsAt,
       lastStartAt: at(last?.lastStart ?? null), firstFew: last?.firstFew ?? null, lastStartFewAt: at(last?.lastStartFew ?? null), afterTest: given.untested.has(turnId),
       readyAt: moves.readyAt.get(turnId) ?? null, toldAt: moves.toldAt.get(turnId) ?? null,
     }
   })
   for (const part of partsOf(rows)) tx.insert(planEntry).values(part).run()
+  const mates = made.entries.flatMap(entry => membersOf(entry).slice(1).map(memberId => ({ studioId, planId, turnId: turnIdOf(entry.activity), memberId })))
+  for (const part of partsOf(mates)) tx.insert(planMate).values(part).run()
   for (const part of partsOf(moves.moves)) tx.insert(planChange).values(part.map(move => ({ studioId, planId, ...move }))).run()
   for (const part of partsOf(holdsOf(facts, rows, now))) tx.insert(planHold).values(part.map(hold => ({ studioId, planId, ...hold }))).run()
   return planId
 }
+
+/** Whose hands an entry takes. */
+const membersOf = (entry: Plan['entries'][number]) => entry.resources.map(memberIdOf)
 
 const partsOf = <Row>(rows: readonly Row[]): Row[][] => Array.from({ length: Math.ceil(rows.length / rowsAtOnce) }, (_, part) => rows.slice(part * rowsAtOnce, (part + 1) * rowsAtOnce))
 

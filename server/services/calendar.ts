@@ -1,6 +1,6 @@
 import { and, asc, eq, isNull, sql } from 'drizzle-orm'
 import icalendar, { ICalEventTransparency } from 'ical-generator'
-import { calendarLink, member, part, person, piece, pieceStep, place, plan, planEntry, stay, stepTarget, studio, turn } from '~~/db/schema'
+import { calendarLink, member, part, person, piece, pieceStep, place, plan, planEntry, planMate, stay, stepTarget, studio, turn } from '~~/db/schema'
 import type { StudioRow } from '~~/server/services/sessions'
 import { studioState } from '~~/server/services/studio-state'
 import type { Database } from '~~/server/utils/database'
@@ -54,12 +54,12 @@ function entriesOf(db: Database, owner: StudioRow, memberId: number | null, now:
 /** Every waiting turn of the plan in force, and where the part it is about stands. */
 function plannedTurns(db: Database, studioId: number): PlannedTurn[] {
   return db.select({
-    turnId: planEntry.turnId, sessionId: planEntry.sessionId, memberId: planEntry.memberId, step: pieceStep.name, kind: pieceStep.kind, turnKind: turn.kind, turnName: turn.name,
+    turnId: planEntry.turnId, sessionId: planEntry.sessionId, memberId: planEntry.memberId, mates: sql<string | null>`(select group_concat(${planMate.memberId}) from ${planMate} where ${planMate.planId} = ${planEntry.planId} and ${planMate.turnId} = ${planEntry.turnId})`, step: pieceStep.name, kind: pieceStep.kind, turnKind: turn.kind, turnName: turn.name,
     piece: piece.name, place: sql<string | null>`min(${place.name})`, startsAt: planEntry.startsAt, endsAt: planEntry.endsAt, lastStartAt: planEntry.lastStartAt,
   }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).innerJoin(turn, eq(turn.id, planEntry.turnId)).innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).innerJoin(piece, eq(piece.id, pieceStep.pieceId))
     .leftJoin(stepTarget, eq(stepTarget.stepId, pieceStep.id)).leftJoin(part, eq(part.id, stepTarget.partId)).leftJoin(stay, and(eq(stay.partId, part.id), isNull(stay.toAt))).leftJoin(place, eq(place.id, stay.placeId))
     .where(scoped(plan, studioId, eq(plan.current, true), eq(turn.status, 'waiting'))).groupBy(planEntry.turnId).orderBy(asc(planEntry.startsAt), asc(planEntry.turnId)).all()
-    .map(({ turnKind, turnName, ...row }) => ({ ...row, check: turnKind === 'work' ? null : turnName }))
+    .map(({ turnKind, turnName, memberId, mates, ...row }) => ({ ...row, memberIds: [memberId, ...(mates?.split(',') ?? []).map(Number)].filter(id => id !== null), check: turnKind === 'work' ? null : turnName }))
 }
 
 function written(owner: StudioRow, person: string | null, entries: readonly CalendarEntry[], now: number): string {

@@ -29,7 +29,7 @@ export function planState(db: Database, studioId: number, now: number): PlanStat
   const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
   return {
     at: now, planMadeAt: current?.madeAt ?? null, days,
-    people: facts.members.map(({ id }) => ({ memberId: id, name: names.get(id) ?? '', blocks: blocks.filter(block => block.memberId === id && block.fromAt < until && block.toAt > now) })),
+    people: facts.members.map(({ id }) => ({ memberId: id, name: names.get(id) ?? '', blocks: ofMember(blocks, id, names).filter(block => block.fromAt < until && block.toAt > now) })),
     places: placesOf(db, facts, now, until), moved: movedTurns(db, studioId, now, hours, studioZone(facts.owner.zone)),
     objective: current ? partsOf(current.objective) : null,
   }
@@ -55,8 +55,14 @@ function daysOf(facts: PlanFacts, blocks: readonly PlanBlock[], now: number): Pl
 
 interface Row { entry: Entry, turn: PlanFacts['turns'][number], step: PlanFacts['steps'][number], piece: PlanFacts['pieces'][number], pin: PlanFacts['pins'][number] | undefined }
 
+type Block = Omit<PlanBlock, 'with'> & { memberIds: number[] }
+
+/** What takes somebody's hands, with the names of those whose hands it takes as well. */
+const ofMember = (blocks: readonly Block[], memberId: number, names: ReadonlyMap<number, string>): PlanBlock[] => blocks.flatMap(({ memberIds, ...block }) => (
+  memberIds.includes(memberId) ? [{ ...block, with: memberIds.flatMap(id => (id === memberId ? [] : names.get(id) ?? [])) }] : []))
+
 /** Sessions, what is pinned in one go, and like acts straight after one another: each one block. */
-function blocksOf(db: Database, facts: PlanFacts): PlanBlock[] {
+function blocksOf(db: Database, facts: PlanFacts): Block[] {
   const sessions = new Map(db.select().from(planSession).where(scoped(planSession, facts.owner.id)).all().map(each => [each.id, each]))
   const blocks = rowsOf(facts).reduce<Row[][]>((found, row) => {
     const last = found.find(rows => joins(rows, row))
@@ -64,14 +70,14 @@ function blocksOf(db: Database, facts: PlanFacts): PlanBlock[] {
     else found.push([row])
     return found
   }, [])
-  return blocks.flatMap((rows): PlanBlock[] => {
+  return blocks.flatMap((rows): Block[] => {
     const [first] = rows
     if (!first) return []
     const session = sessions.get(first.entry.sessionId ?? 0)
     const [workAt, endsAt] = [first.entry.startsAt, Math.max(...rows.map(row => row.entry.endsAt))]
     const ready = rows.flatMap(row => row.entry.readyAt ?? [])
     return [{
-      key: `b${first.turn.id}`, memberId: first.entry.memberId, turnIds: rows.map(row => row.turn.id), pieces: [...new Set(rows.map(row => row.piece.name))], kind: first.turn.kind, stepKind: first.step.kind, step: first.turn.name || first.step.name, batch: first.piece.batch,
+      key: `b${first.turn.id}`, memberId: first.entry.memberId, memberIds: first.entry.memberIds, turnIds: rows.map(row => row.turn.id), pieces: [...new Set(rows.map(row => row.piece.name))], kind: first.turn.kind, stepKind: first.step.kind, step: first.turn.name || first.step.name, batch: first.piece.batch,
       fromAt: session?.startsAt ?? workAt, toAt: session?.endsAt ?? endsAt, workAt, readyAt: ready.length > 0 ? Math.max(...ready) : null, pinId: first.pin?.id ?? null, doing: first.turn.status === 'doing', lastStartAt: first.entry.lastStartAt,
     }]
   })
@@ -91,7 +97,7 @@ function rowsOf(facts: PlanFacts): Row[] {
 
 function joins(rows: readonly Row[], row: Row): boolean {
   const [first, last] = [rows[0], rows[rows.length - 1]]
-  if (!first || !last || first.entry.memberId !== row.entry.memberId || (first.pin?.madeAt ?? null) !== (row.pin?.madeAt ?? null)) return false
+  if (!first || !last || String(first.entry.memberIds) !== String(row.entry.memberIds) || (first.pin?.madeAt ?? null) !== (row.pin?.madeAt ?? null)) return false
   if (first.entry.sessionId !== null || row.entry.sessionId !== null) return first.entry.sessionId === row.entry.sessionId
   return first.step.name === row.step.name && first.turn.kind === row.turn.kind && first.turn.status === row.turn.status && row.entry.startsAt <= last.entry.endsAt + minute
 }

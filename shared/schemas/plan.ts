@@ -6,10 +6,10 @@ import type { PlaceKind, StepKind, TurnKind } from '#shared/terms'
 export interface PlanDay { date: string, weekday: number, opensAt: number, closesAt: number, closed: boolean }
 
 /**
- * Work of one pair of hands, like work in one block. `fromAt` to `toAt` with set-up and clean-up; `workAt` is when the first
+ * Work of somebody's hands, like work in one block; `with`: who else's hands it takes, `memberId`: whose hands are asked for first. `fromAt` to `toAt` with set-up and clean-up; `workAt` is when the first
  * piece begins, `pieces` in the order of their turns. `pinId`: somebody fixed its time.
  */
-export interface PlanBlock { key: string, memberId: number | null, turnIds: number[], pieces: string[], kind: TurnKind, stepKind: StepKind, step: string, batch: string, fromAt: number, toAt: number, workAt: number, readyAt: number | null, pinId: number | null, doing: boolean, lastStartAt: number | null }
+export interface PlanBlock { key: string, memberId: number | null, with: string[], turnIds: number[], pieces: string[], kind: TurnKind, stepKind: StepKind, step: string, batch: string, fromAt: number, toAt: number, workAt: number, readyAt: number | null, pinId: number | null, doing: boolean, lastStartAt: number | null }
 
 /** Pieces alike at one place for a while; `toAt` null: nothing planned takes them away. `dryAt`: when what lies on them lets the next step begin. */
 export interface PlanStrip { key: string, pieces: string[], units: number, fromAt: number, toAt: number | null, dryAt: number | null, lies: boolean }

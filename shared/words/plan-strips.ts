@@ -2,7 +2,7 @@ import type { Objective } from '#shared/planning/types'
 import type { PlanBlock, PlanDay, PlanStrip } from '#shared/schemas/plan'
 import { clockFace, clockTime, localDate, roughTime, span } from '#shared/time'
 import type { Clock } from '#shared/time'
-import { groupNames } from '#shared/words/group'
+import { groupNames, listText } from '#shared/words/group'
 import { stepLabel } from '#shared/words/steps'
 import { asSentence } from '#shared/words/verdict'
 import { weekdayText } from '#shared/words/week'
@@ -23,6 +23,7 @@ export const planStrips = {
   free: 'nothing planned',
   pinned: 'pinned',
   doing: 'in hand',
+  with: (names: readonly string[]) => `with ${listText(names)}`,
   objective: 'What the plan costs',
   breakdown: 'The plan weighs these in this order; the first that differs decides.',
   change: (title: string) => `Pin ${title}`,
@@ -53,9 +54,10 @@ export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${as
 export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${localDate(fromAt, clock.zone) === localDate(toAt, clock.zone) ? clockFace(clock.zone.wall(toAt).minutes) : clockTime(toAt, clock)}`
 
 /** What is known of a block beside its time, one sentence each. */
-export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'lastStartAt'>, clock: Clock): string[] {
+export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'lastStartAt' | 'with'>, clock: Clock): string[] {
   return [
     block.readyAt === null || block.readyAt <= clock.now ? 'What it waits for is ready.' : `Ready from ${roughTime(block.readyAt, clock, 'up')}.`,
+    ...block.with.length > 0 ? [`It takes ${block.with.length + 1} people at once: ${planStrips.with(block.with)}.`] : [],
     ...block.lastStartAt === null ? [] : [`${block.lastStartAt < clock.now ? 'The last moment to start has gone by' : 'Last moment to start'}: ${clockTime(block.lastStartAt, clock)}.`],
   ]
 }

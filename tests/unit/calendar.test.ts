@@ -6,7 +6,7 @@ import { at, clockAt, filmState, groupState, noon, pieceState, readAll, studioWi
 
 const clock = clockAt(noon)
 const turn = (over: Partial<PlannedTurn>): PlannedTurn => ({
-  turnId: 7, sessionId: null, memberId: 1, step: 'Second varnish', kind: 'coat', check: null, piece: 'Ledger 1', place: 'Shelf A', startsAt: at(14), endsAt: at(14.25), lastStartAt: null, ...over,
+  turnId: 7, sessionId: null, memberIds: [1], step: 'Second varnish', kind: 'coat', check: null, piece: 'Ledger 1', place: 'Shelf A', startsAt: at(14), endsAt: at(14.25), lastStartAt: null, ...over,
 })
 
 describe('planned work in a calendar', () => {
@@ -23,7 +23,7 @@ describe('planned work in a calendar', () => {
   })
 
   it('leaves out other people’s work when asked for one person’s, and names no place when there are two', () => {
-    const turns = [turn({}), turn({ turnId: 8, memberId: 2 }), turn({ turnId: 10, sessionId: 4, place: 'Rail' }), turn({ turnId: 11, sessionId: 4 })]
+    const turns = [turn({}), turn({ turnId: 8, memberIds: [2] }), turn({ turnId: 10, sessionId: 4, place: 'Rail' }), turn({ turnId: 11, sessionId: 4 })]
     expect(workEntries(turns, 1, clock).map(each => [each.key, each.place])).toEqual([['work-7', 'Shelf A'], ['work-10', null]])
     expect(workEntries(turns, 3, clock)).toEqual([])
   })
