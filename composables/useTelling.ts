@@ -69,7 +69,7 @@ function fellowsMoved(kind: TellableKind, before: StudioState | null, after: Stu
 }
 
 /** What a line on the page keeps of a telling, whatever came of it. */
-const baseOf = (telling: Telling) => ({ kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, detail: telling.detail ?? {}, bundle: telling.bundle ?? null, fact: factOf(telling), names: telling.names ?? groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
+const baseOf = (telling: Telling) => ({ by: useUntoldStore().memberId, kind: telling.kind, body: telling.body, partIds: telling.partIds, pieceIds: telling.pieces.map(piece => piece.id), step: telling.step ?? null, material: telling.material ?? null, detail: telling.detail ?? {}, bundle: telling.bundle ?? null, fact: factOf(telling), names: telling.names ?? groupNames(telling.pieces.map(piece => piece.name)), doneAt: telling.doneAt })
 
 /** Solvent work that waits for its three answers: nothing of it is recorded before. */
 function waitingWork() {
@@ -179,7 +179,11 @@ const key: InjectionKey<TellingOnPage> = Symbol('telling')
 
 /** Lets everything on a page tell acts and read the studio they are about. */
 export function provideTelling(studio: Studio): TellingOnPage {
-  const telling = { ...makeTelling(studio), studio }
+  return provideTellingAs({ ...makeTelling(studio), studio })
+}
+
+/** The same telling, with some of it done another way beneath this component. */
+export function provideTellingAs(telling: TellingOnPage): TellingOnPage {
   provide(key, telling)
   return telling
 }

@@ -6,6 +6,8 @@ import type { TellableKind, ActRequest } from '#shared/schemas/act'
 /** One tap and what came of it, kept on the page until somebody has read it. */
 export interface ToldLine {
   key: number
+  /** Under which member's name a bench tablet recorded it; null at the bench, and on a person's own page. */
+  by: number | null
   kind: TellableKind
   body: ActRequest['body']
   partIds?: number[]

@@ -1,5 +1,5 @@
 import { eq, isNull } from 'drizzle-orm'
-import { member } from '~~/db/schema'
+import { benchTablet, member } from '~~/db/schema'
 import type { StudioRow } from '~~/server/services/sessions'
 import type { Database } from '~~/server/utils/database'
 import { impossible, malformed, tooMany } from '~~/server/utils/errors'
@@ -19,18 +19,23 @@ export function readOwnPin(db: Database, studioId: number, memberId: number, now
   return { set: (row?.hash ?? null) !== null, lockedTill: row?.till && row.till > now ? new Date(row.till).toISOString() : null }
 }
 
+/** Whoever got in by the PIN as it was acts under that name no longer, at any tablet. */
+const endNames = (db: Database, studioId: number, memberId: number) => db.update(benchTablet).set({ asMemberId: null, asTill: null }).where(scoped(benchTablet, studioId, eq(benchTablet.asMemberId, memberId))).run()
+
 /** Sets or changes one's own PIN; what was counted against the old one is forgotten. */
 export async function setOwnPin(db: Database, studioId: number, memberId: number, pin: string): Promise<{ ok: true } | Refusal> {
   const problem = pinProblem(pin)
   if (problem) return malformed({ pin: mistakes[problem] })
   const pinHash = await makePasswordHash(pin)
   db.update(member).set({ pinHash, pinWrong: 0, pinLockedTill: null }).where(owned(member, studioId, memberId)).run()
+  endNames(db, studioId, memberId)
   return { ok: true }
 }
 
 /** Takes one's own PIN away: no bench tablet takes one for this person any more. */
 export function removeOwnPin(db: Database, studioId: number, memberId: number): { ok: true } {
   db.update(member).set({ pinHash: null, pinWrong: 0, pinLockedTill: null }).where(owned(member, studioId, memberId)).run()
+  endNames(db, studioId, memberId)
   return { ok: true }
 }
 
