@@ -239,4 +239,20 @@ describe('a PIN', () => {
     body(await helper.put('/api/own-pin', { pin: '1379' }))
     expect((await open(tablet, 'hazel@example.test', '1379')).status).toBe(200)
   })
+
+  it('that is changed or taken away ends its name at every tablet at once', async () => {
+    const piece = await newPiece('Box')
+    for (const end of [() => maker.put('/api/own-pin', { pin: '2581' }), () => maker.delete('/api/own-pin')]) {
+      body(await maker.put('/api/own-pin', { pin: '2580' }))
+      const tablets = [await benchTabletOf(server.origin, maker), await benchTabletOf(server.origin, maker)].map(each => each.tablet)
+      for (const tablet of tablets) expect((await open(tablet, 'moss@example.test', '2580')).status).toBe(200)
+      expect((await page(tablets[0]!)).as?.name).toBe('moss')
+      body(await end())
+      for (const tablet of tablets) {
+        expect((await page(tablet)).as).toBeNull()
+        expect((await tell(tablet, piece, 'seen', {}, memberOf['moss@example.test'])).status).toBe(403)
+      }
+    }
+    body(await maker.put('/api/own-pin', { pin: '2580' }))
+  })
 })

@@ -28,8 +28,8 @@ export const made = async (who: Visitor, path: string, body: unknown) => {
 const roomOf = (name: string, sprayArea: boolean) => ({ name, heated: true, outdoor: false, sprayArea, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
 export const piecesNow = async () => (await bench.maker.get<State>('/api/state')).body.pieces
 
-export async function startBatch(name: string, count: number) {
-  const schedule = rows<{ id: number }>('select id from finishing_schedule where library_key = ?', 'painted-waxed-box')[0]
+export async function startBatch(name: string, count: number, key = 'painted-waxed-box') {
+  const schedule = rows<{ id: number }>('select id from finishing_schedule where library_key = ?', key)[0]
   await made(bench.maker, '/api/batches', { clientKey: `bench-batch-${++bench.keys}`, name: `${name} batch`, scheduleId: schedule?.id, pieces: Array.from({ length: count }, (_, i) => `${name} ${i + 1}`), placeId: bench.shelf, order: null, startsAt: new Date(Date.now() - 6 * 60 * minute).toISOString() })
 }
 
