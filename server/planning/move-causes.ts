@@ -53,11 +53,10 @@ export class MoveCauses {
 
   /** Why a turn that was to begin at `wasAt` begins at `isAt` (ms UTC). */
   of(turnId: number, wasAt: number, isAt: number): MoveCause {
-    const { given, facts, names } = this.compared
     const spot = this.spot(turnId, wasAt, isAt)
     if (!spot) return { code: 'fits better' }
-    const pin = facts.pins.find(each => each.turnId === turnId)
-    if (pin && given.problem.fixed.some(each => each.activity === spot.id)) return { code: 'pinned', by: names.get(pin.madeByMemberId ?? 0) ?? null }
+    const pinned = this.pinned(spot)
+    if (pinned) return pinned
     if (spot.entry.afterRecovery) return { code: 'window missed' }
     const cause = spot.is > spot.was ? this.notReady(spot, 0) ?? this.noHands(spot) ?? this.noPlace(spot) ?? this.keptApart(spot) : this.readySooner(spot) ?? this.freed(spot)
     return cause ?? { code: 'fits better' }
@@ -68,6 +67,13 @@ export class MoveCauses {
     const [work, activity, entry] = [this.works.get(id), this.activities.get(id), this.entries.get(id)]
     const readyAt = this.last.get(turnId)?.readyAt ?? null
     return work && activity && entry ? { id, turnId, work, activity, entry, was: this.minutes(wasAt), is: this.minutes(isAt), wasReady: readyAt === null ? null : this.minutes(readyAt) } : null
+  }
+
+  /** Somebody gave it this time. */
+  private pinned({ id, turnId }: Spot): MoveCause | null {
+    const { given, facts, names } = this.compared
+    const pin = facts.pins.find(each => each.turnId === turnId)
+    return pin && given.problem.fixed.some(each => each.activity === id) ? { code: 'pinned', by: names.get(pin.madeByMemberId ?? 0) ?? null } : null
   }
 
   private minutes(at: number): number {
@@ -100,16 +106,25 @@ export class MoveCauses {
     if (!work || !entry) return null
     const step = work.step.name
     if (!was) return work.step.origin === 'recovery' ? { code: 'recovery', step } : { code: 'step added', step }
-    const waiting = work.turns.some(turn => turn.id === turnId && turn.status === 'waiting')
-    if (waiting && was.dueAt <= this.compared.now) return { code: 'not told', step, dueAt: was.dueAt }
-    if (entry.start < this.minutes(was.startsAt) + slack) return null
     const spot = this.spot(turnId, was.startsAt, this.instant(entry.start))
+    const waiting = work.turns.some(turn => turn.id === turnId && turn.status === 'waiting')
+    // What is pinned lies where somebody wants it, whatever nobody has told.
+    if (waiting && was.dueAt <= this.compared.now && !(spot && this.pinned(spot))) return this.silentRoot(spot, depth) ?? { code: 'not told', step, dueAt: was.dueAt }
+    if (entry.start < this.minutes(was.startsAt) + slack) return null
     const because = spot && depth < deepest ? this.later(spot, depth + 1) : null
     // The root alone is told, not every step on the way.
     return because?.code === 'follows' ? because : { code: 'follows', step, startsAt: this.instant(entry.start), because }
   }
 
+  /** What nobody has told may itself wait for work that is pinned, or that nobody has told either. */
+  private silentRoot(spot: Spot | null, depth: number): MoveCause | null {
+    const root = spot && depth < deepest ? this.notReady(spot, depth + 1) : null
+    return root?.code === 'not told' || (root?.code === 'follows' && root.because?.code === 'pinned') ? root : null
+  }
+
   private later(spot: Spot, depth: number): MoveCause | null {
+    const pinned = this.pinned(spot)
+    if (pinned) return pinned
     return spot.entry.afterRecovery ? { code: 'window missed' } : this.notReady(spot, depth) ?? this.noHands(spot) ?? this.noPlace(spot) ?? this.keptApart(spot)
   }
 

@@ -48,7 +48,12 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
     const wasAt = fresh?.wasAt ?? heardAt
     if (!isNoticed(wasAt, isAt, now)) continue
     if (moved) found.moves.push({ turnId, wasAt, isAt, movedAt: now, why: causes.of(turnId, heardAt, isAt) })
-    else if (fresh) found.moves.push({ turnId, wasAt, isAt, movedAt: fresh.movedAt, why: fresh.why })
+    else if (fresh) found.moves.push({ turnId, wasAt, isAt, movedAt: fresh.movedAt, why: fresh.isAt === isAt ? fresh.why : stillWhy(fresh.why, causes.of(turnId, wasAt, isAt)) })
   }
   return found
+}
+
+/** Why a move that was told with a cause has moved on a little: what is true now; where nothing shows it, the first cause, unless that names a time which has passed on too. */
+function stillWhy(told: MoveCause, now: MoveCause): MoveCause {
+  return now.code === 'fits better' && told.code !== 'follows' && told.code !== 'film later' && told.code !== 'film sooner' ? told : now
 }

@@ -43,7 +43,7 @@ export const pinDialog = {
   notYours: 'Owners and makers pin the plan.',
   noTime: 'Give a day and a time.',
   done: (title: string, at: string) => `${title} is pinned at ${at}. The rest of the plan follows.`,
-  gone: (title: string) => `${title} is no longer pinned. The plan is made anew.`,
+  gone: (title: string) => `${title} is no longer pinned: the plan may move it again.`,
   moving: (at: string) => `to ${at}`,
 } as const
 

@@ -102,6 +102,39 @@ describe('what moved', () => {
     expect(whyOf(studio, first?.turnId ?? 0, now + minute)).toEqual({ code: 'hours', name: null })
   })
 
+  it('names a pin as the root of what follows, also where nobody has told the pinned work', async () => {
+    const studio = plannedStudio(now, 'oiled-bowl', 1)
+    await planAt(studio, now)
+    const [first, second, , later] = studio.db.select().from(planEntry).all().sort((a, b) => a.startsAt - b.startsAt)
+    const pinAt = (startsAt: number) => {
+      studio.db.delete(pin).run()
+      studio.db.insert(pin).values({ studioId: studio.studioId, turnId: first?.turnId ?? 0, startsAt, madeAt: now, madeByMemberId: studio.members.maker.id }).run()
+    }
+    pinAt(now + 4 * hour)
+    await planAt(studio, now + minute)
+    expect(whyOf(studio, second?.turnId ?? 0, now + minute)).toMatchObject({ code: 'follows', startsAt: now + 4 * hour, because: { code: 'pinned', by: 'The maker' } })
+    // Its hour goes by in silence, and somebody pins it to the evening.
+    pinAt(now + 7 * hour)
+    await planAt(studio, now + 5 * hour)
+    // Its own hour has gone by as well: what comes after them both is told.
+    expect(whyOf(studio, later?.turnId ?? 0, now + 5 * hour)).toMatchObject({ code: 'follows', startsAt: now + 7 * hour, because: { code: 'pinned', by: 'The maker' } })
+  })
+
+  it('names no time that has moved on since, where a move goes a little further', async () => {
+    const studio = plannedStudio(now, 'oiled-bowl', 1)
+    await planAt(studio, now)
+    const [first, second] = studio.db.select().from(planEntry).all().sort((a, b) => a.startsAt - b.startsAt)
+    const pinAt = (startsAt: number) => {
+      studio.db.delete(pin).run()
+      studio.db.insert(pin).values({ studioId: studio.studioId, turnId: first?.turnId ?? 0, startsAt, madeAt: now, madeByMemberId: studio.members.maker.id }).run()
+    }
+    pinAt(now + 4 * hour)
+    await planAt(studio, now + minute)
+    pinAt(now + 4 * hour + 20 * minute)
+    await planAt(studio, now + 2 * minute)
+    expect(whyOf(studio, second?.turnId ?? 0, now + 2 * minute)).toMatchObject({ code: 'follows', startsAt: now + 4 * hour + 20 * minute })
+  })
+
   it('does not tell a start that went by in silence', async () => {
     const studio = plannedStudio(now, 'oiled-bowl', 1)
     await planAt(studio, now)
