@@ -19,7 +19,7 @@ export type MoveCause =
   | { code: 'follows', step: string, startsAt: number, because: MoveCause | null }
   | { code: 'step added', step: string }
   | { code: 'hours', name: string | null }
-  | { code: 'hands', name: string | null, step: string, batch: string, added: boolean }
+  | { code: 'hands', name: string | null, step: string, batch: string, added: boolean, because?: MoveCause | null }
   | { code: 'freed', name: string | null, step: string, batch: string }
   | { code: 'place', kind: PlaceKind }
   | { code: 'dust', step: string | null }

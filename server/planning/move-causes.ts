@@ -1,6 +1,6 @@
 import { dustKeptOff } from '~~/server/planning/dust'
 import type { PlanFacts } from '~~/server/planning/facts'
-import { activityId, memberIdOf, turnIdOf } from '~~/server/planning/ids'
+import { activityId, handsId, memberIdOf, turnIdOf } from '~~/server/planning/ids'
 import type { StepWork } from '~~/server/planning/lags'
 import type { StudioProblem } from '~~/server/planning/problem'
 import { keptOut } from '~~/server/planning/vapour'
@@ -57,8 +57,8 @@ export class MoveCauses {
     if (!spot) return { code: 'fits better' }
     const pinned = this.pinned(spot)
     if (pinned) return pinned
-    if (spot.entry.afterRecovery) return { code: 'window missed' }
-    const cause = spot.is > spot.was ? this.notReady(spot, 0) ?? this.noHands(spot) ?? this.noPlace(spot) ?? this.keptApart(spot) : this.readySooner(spot) ?? this.freed(spot)
+    if (this.missedNow(spot)) return { code: 'window missed' }
+    const cause = spot.is > spot.was ? this.notReady(spot, 0) ?? this.forbidden(spot) : this.readySooner(spot) ?? this.freed(spot)
     return cause ?? { code: 'fits better' }
   }
 
@@ -70,7 +70,7 @@ export class MoveCauses {
   }
 
   /** Somebody gave it this time. */
-  private pinned({ id, turnId }: Spot): MoveCause | null {
+  private pinned({ id, turnId }: Pick<Spot, 'id' | 'turnId'>): MoveCause | null {
     const { given, facts, names } = this.compared
     const pin = facts.pins.find(each => each.turnId === turnId)
     return pin && given.problem.fixed.some(each => each.activity === id) ? { code: 'pinned', by: names.get(pin.madeByMemberId ?? 0) ?? null } : null
@@ -125,7 +125,31 @@ export class MoveCauses {
   private later(spot: Spot, depth: number): MoveCause | null {
     const pinned = this.pinned(spot)
     if (pinned) return pinned
-    return spot.entry.afterRecovery ? { code: 'window missed' } : this.notReady(spot, depth) ?? this.noHands(spot) ?? this.noPlace(spot) ?? this.keptApart(spot)
+    return this.missedNow(spot) ? { code: 'window missed' } : this.notReady(spot, depth) ?? this.forbidden(spot)
+  }
+
+  /** Its old time is forbidden by something other than what it waits for. */
+  private forbidden(spot: Spot): MoveCause | null {
+    const hands = this.noHands(spot)
+    // Where nobody works at all, nobody is named.
+    return (hands?.code === 'hours' ? hands : this.handAway(spot.turnId)) ?? hands ?? this.noPlace(spot) ?? this.keptApart(spot)
+  }
+
+  /** Its recovery is in this plan and was not in the last, which gave it as long as it takes without. */
+  private missedNow({ turnId, entry }: Spot): boolean {
+    const was = this.last.get(turnId)
+    return entry.afterRecovery && was !== undefined && this.minutes(was.endsAt) - this.minutes(was.startsAt) < entry.end - entry.start
+  }
+
+  /** Whoever the last plan gave it to no longer works then. */
+  private handAway(turnId: number): MoveCause | null {
+    const { given, names } = this.compared
+    const was = this.last.get(turnId)
+    const hand = was && given.hands.find(each => each.memberId === was.memberId)
+    if (!was || !hand || was.startsAt < given.zeroAt) return null
+    const start = this.minutes(was.startsAt)
+    const end = this.activities.get(activityId(turnId))?.mayRunOver ? start + 1 : this.minutes(was.endsAt)
+    return hand.open.some(([from, to]) => start >= from && end <= to) ? null : { code: 'hours', name: names.get(hand.memberId) ?? null }
   }
 
   private film(code: 'film later' | 'film sooner', { work, id }: Spot, ready: number): MoveCause {
@@ -154,8 +178,8 @@ export class MoveCauses {
       if (free >= count) continue
       const others = taken.flatMap(({ hand, by }) => by.flatMap(each => this.taker(hand, each)))
       // The same work of its own batch is no reason by itself: what came between is.
-      const told = others.find(each => each.added) ?? others.find(each => each.batchId !== this.batchOf(work)?.batchId)
-      return told ? { code: 'hands', name: there.length > 1 ? null : names.get(told.memberId) ?? null, step: told.step, batch: told.batch, added: told.added } : null
+      const told = others.find(each => each.added) ?? others.find(each => each.because !== null) ?? others.find(each => each.batchId !== this.batchOf(work)?.batchId)
+      return told ? { code: 'hands', name: there.length > 1 ? null : names.get(told.memberId) ?? null, step: told.step, batch: told.batch, added: told.added, because: told.because } : null
     }
     return null
   }
@@ -163,7 +187,15 @@ export class MoveCauses {
   private taker(hand: string, { activities }: Busy) {
     const work = this.works.get(activities[0] ?? '')
     const piece = work && this.batchOf(work)
-    return work && piece ? [{ memberId: memberIdOf(hand), step: work.step.name, batch: piece.batch, batchId: piece.batchId, added: !this.knownBatches.has(piece.batchId) }] : []
+    return work && piece ? [{ memberId: memberIdOf(hand), step: work.step.name, batch: piece.batch, batchId: piece.batchId, added: !this.knownBatches.has(piece.batchId), because: activities.reduce<MoveCause | null>((found, id) => found ?? this.broughtHere(id), null) }] : []
+  }
+
+  /** Why work lies at another time or in other hands than the last plan gave it, where that is somebody's doing. */
+  private broughtHere(id: string): MoveCause | null {
+    const turnId = turnIdOf(id)
+    const [was, entry] = [this.last.get(turnId), this.entries.get(id)]
+    const stands = !was || !entry || (Math.abs(entry.start - this.minutes(was.startsAt)) < slack && entry.resources.includes(handsId(was.memberId ?? 0)))
+    return stands ? null : this.pinned({ id, turnId }) ?? this.handAway(turnId)
   }
 
   /** Where it will rest was full at its old time. */

@@ -1,8 +1,9 @@
 import { and, eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { openHours, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
+import { closure, openHours, plan, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { movedTurns } from '~~/server/services/plan-moves'
+import { copyAgain } from '~~/server/utils/database'
 import { predictPieces } from '~~/server/work/predict'
 import { studioZone } from '#shared/time'
 import { likeMoves } from '#shared/plan-moves'
@@ -100,6 +101,43 @@ describe('what moved', () => {
     studio.db.update(openHours).set({ toMin: 10 * 60 }).where(eq(openHours.weekday, 2)).run()
     await planAt(studio, now + minute)
     expect(whyOf(studio, first?.turnId ?? 0, now + minute)).toEqual({ code: 'hours', name: null })
+  })
+
+  it('names who is away, for their own work and for what gives way to it; with them there nothing moves', async () => {
+    // Before the studio opens.
+    const early = now - 3 * hour
+    const studio = plannedStudio(early, 'painted-waxed-box', 6)
+    const { db, studioId, members } = studio
+    await planAt(studio, early)
+    const theirs = new Set(db.select().from(planEntry).where(eq(planEntry.memberId, members.maker.id)).all().map(each => each.turnId))
+    const stayed = { ...studio, db: copyAgain(db) }
+    db.insert(closure).values({ studioId, memberId: members.maker.id, name: 'Away', fromDate: '2026-04-07', toDate: '2026-04-08' }).run()
+    await planAt(studio, early + minute)
+    const told = movesAt(studio, early + minute)
+    const away = { code: 'hours', name: 'The maker' }
+    expect(told.some(each => theirs.has(each.turnId) && JSON.stringify(each.why) === JSON.stringify(away))).toBe(true)
+    const gaveWay = told.find(each => each.why.code === 'hands')
+    expect(gaveWay?.why).toMatchObject({ name: 'The owner', step: 'Glue up the box', because: away })
+    expect(moveText(gaveWay ? [gaveWay] : [], { now: early, zone }, 'metric')).toMatch(/: The owner is at “Glue up the box” of Boxs then; that moved because The maker does not work then\.$/)
+    expect(told.filter(each => each.why.code === 'fits better' || each.why.code === 'window missed')).toEqual([])
+    // What it claims, solved: the same plan a minute later with nobody away.
+    await planAt(stayed, early + minute)
+    expect(movesAt(stayed, early + minute)).toEqual([])
+    stayed.db.$client.close()
+  })
+
+  it('does not blame a window that was missed in the last plan as well', async () => {
+    const early = now - 3 * hour
+    // Open for 75 minutes a day: windows shut in between.
+    const studio = plannedStudio(early, 'made-over-cover', 1, 9 * 60 + 45)
+    const { db, studioId } = studio
+    await planAt(studio, early)
+    expect(db.select().from(plan).get()?.objective.windowsMissed).toBeGreaterThan(0)
+    db.insert(closure).values({ studioId, memberId: null, name: 'Shut', fromDate: '2026-04-07', toDate: '2026-04-07' }).run()
+    await planAt(studio, early + minute)
+    const told = movesAt(studio, early + minute)
+    expect(told.length).toBeGreaterThan(0)
+    expect(told.filter(each => JSON.stringify(each.why).includes('window missed'))).toEqual([])
   })
 
   it('names a pin as the root of what follows, also where nobody has told the pinned work', async () => {
