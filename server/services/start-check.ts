@@ -160,17 +160,18 @@ function pushedBy(plan: Plan, given: StudioProblem, facts: PlanFacts, batchOf: R
     const minutes = before === undefined ? 0 : Math.round((end - before) / minute)
     if (!row || before === undefined || minutes < pushedMin) return []
     const passes = (limit: number | null) => limit !== null && before <= limit && end > limit
-    return [{ id, name: row.name, minutes, past: passes(row.promisedAt) ? 'promise' : passes(row.dueAt) ? 'date' : null }]
+    const wasPast = [row.promisedAt, row.dueAt].some(limit => limit !== null && before > limit)
+    return [{ id, name: row.name, minutes, past: passes(row.promisedAt) ? 'promise' : passes(row.dueAt) ? 'date' : wasPast ? 'late already' : null }]
   }).sort((a, b) => b.minutes - a.minutes)
 }
 
 /**
- * The best is a start at an hour of work, with the fewest windows missed, then the fewest dates broken, then the earliest end: where one of the set hours is as
- * good as the plan's own choice, that hour is it.
+ * The best is a start at an hour of work, with the fewest windows missed, then the fewest dates broken or late ones made later, then the earliest end, which what
+ * others end later counts against: where one of the set hours is as good as the plan's own choice, that hour is it.
  */
-function bestFirst(plans: readonly StartPlan[]): StartPlan[] {
+export function bestFirst(plans: readonly StartPlan[]): StartPlan[] {
   const free = plans.find(plan => plan.start === 'best')
-  const rank = (plan: StartPlan) => [Number(plan.closed), plan.without, plan.missed.length, plan.pushes.filter(push => push.past !== null).length, plan.endsAt ?? Infinity] as const
+  const rank = (plan: StartPlan) => [Number(plan.closed), plan.without, plan.missed.length, plan.pushes.filter(push => push.past !== null).length, (plan.endsAt ?? Infinity) + plan.pushes.reduce((sum, push) => sum + push.minutes, 0) * minute] as const
   const better = (a: StartPlan, b: StartPlan) => {
     const [x, y] = [rank(a), rank(b)]
     const at = x.findIndex((value, i) => value !== y[i])

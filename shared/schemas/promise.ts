@@ -68,8 +68,8 @@ export interface PromiseState {
   standing: PromiseStanding | null
 }
 
-/** A batch that would be ready later because of another, by so many minutes; `past`: then past what was promised, or its date. */
-export interface PushedBatch { id: number, name: string, minutes: number, past: 'promise' | 'date' | null }
+/** A batch that would be ready later because of another, by so many minutes; `past`: then past what was promised, or its date, or later still where it was past one of them anyway. */
+export interface PushedBatch { id: number, name: string, minutes: number, past: 'promise' | 'date' | 'late already' | null }
 
 /** What starting then would mean. `missed`: windows that would shut unused, by step. `hands`: the most at once, and minutes in all. */
 export interface StartPlan {

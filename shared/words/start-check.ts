@@ -32,7 +32,7 @@ const handsText = ({ hands }: StartPlan) => hands.minutes === 0 ? [] : [`${hands
 
 function pushText({ name, minutes, past }: PushedBatch): string {
   const late = minutes < 48 * 60 ? span(Math.round(minutes / 15) * 15) : `${Math.round(minutes / 720) / 2} days`
-  return `${name} ends ${late} later${past === 'promise' ? ', past what was promised' : past === 'date' ? ', past its date' : ''}.`
+  return `${name} ends ${late} later${past === 'promise' ? ', past what was promised' : past === 'date' ? ', past its date' : past === 'late already' ? ', and is late already' : ''}.`
 }
 
 /** What a start would mean, one sentence each: when it ends, what would be missed, whose hands, whom it pushes. `warns` marks what speaks against it. */

@@ -1,13 +1,15 @@
 import { eq, inArray, or } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { batch, member, openHours, plan, planEntry, scheduleCheck, scheduleLink, scheduleStep, scheduleStepTarget, scheduleVersion } from '~~/db/schema'
+import { batch, member, openHours, order, plan, planEntry, scheduleCheck, scheduleLink, scheduleStep, scheduleStepTarget, scheduleVersion } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { searchHere } from '~~/server/planning/search'
 import { recordAct } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { pieceStates } from '~~/server/services/piece-states'
-import { checkStart } from '~~/server/services/start-check'
+import { bestFirst, checkStart } from '~~/server/services/start-check'
 import type { StartPlan } from '#shared/schemas/promise'
+import { studioZone } from '#shared/time'
+import { startLines } from '#shared/words/start-check'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday, 13:00. People are there from 8:30 to 17:20.
@@ -90,6 +92,37 @@ describe('the start check', () => {
     expect(plans.get('now')?.pushes.map(push => push.name)).toEqual(['Boxes'])
     expect(plans.get('now')?.pushes[0]?.minutes).toBeGreaterThanOrEqual(124)
     expect(db.select().from(batch).all()).toHaveLength(1)
+  })
+
+  it('says of a batch that is late already that it would be later still', async () => {
+    const { db, studioId, scheduleOf, check, start, without } = studioOfOne()
+    const boxes = scheduleOf('painted-waxed-box') ?? 0
+    const first = db.select({ key: scheduleStep.key }).from(scheduleStep).innerJoin(scheduleVersion, eq(scheduleVersion.id, scheduleStep.versionId)).where(eq(scheduleVersion.scheduleId, boxes)).get()?.key
+    without(boxes, key => key !== first)
+    // Half past eight: sealed now, the window opens in the afternoon.
+    const morning = Date.parse('2026-04-07T08:30:00Z')
+    start('Boxes', boxes, morning, morning)
+    const orderId = db.insert(order).values({ studioId, name: 'Fair', dueAt: morning - hour }).returning({ id: order.id }).get().id
+    db.update(batch).set({ orderId }).run()
+    await replan(db, studioId, morning, atOnce)
+    const plans = await check(4, morning)
+    const now = plans.get('now')
+    expect(now).toMatchObject({ missed: [], pushes: [{ name: 'Boxes', past: 'late already' }] })
+    expect(startLines(now!, { now: morning, zone: studioZone('UTC') })).toContainEqual({ says: expect.stringMatching(/^Boxes ends .* later, and is late already\.$/), warns: true })
+  })
+
+  it('counts what others end later against a start, before the few hours that it would end sooner', () => {
+    const end = now + 200 * hour
+    const plan = (start: StartPlan['start'], endsAt: number, pushes: StartPlan['pushes'] = []): StartPlan => ({ start, startsAt: now, endsAt, missed: [], hands: { most: 1, minutes: 60 }, pushes, without: 0, closed: false })
+    const pushed = { id: 1, name: 'Frames', minutes: 23 * 60 }
+    const best = (plans: StartPlan[]) => bestFirst(plans).find(each => each.start === 'best')
+    // It ends at the same time, or an hour sooner, and another batch a day later.
+    expect(best([plan('afternoon', end, [{ ...pushed, past: null }]), plan('opening', end), plan('best', end + hour)])?.pushes).toEqual([])
+    expect(best([plan('afternoon', end - hour, [{ ...pushed, past: null }]), plan('opening', end), plan('best', end + hour)])?.pushes).toEqual([])
+    // Late already counts as much as a date that would be broken.
+    expect(best([plan('now', end - 30 * hour, [{ ...pushed, past: 'late already' }]), plan('opening', end), plan('best', end + hour)])?.pushes).toEqual([])
+    // Where it would end days sooner for it, a push within its date is worth it.
+    expect(best([plan('now', end - 72 * hour, [{ ...pushed, past: null }]), plan('opening', end), plan('best', end + hour)])?.pushes).toHaveLength(1)
   })
 
   it('says when nobody works at that hour, and that steps find no time where nobody ever does', async () => {
