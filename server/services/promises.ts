@@ -70,19 +70,19 @@ export async function promiseState(db: Database, studioId: number, batchId: numb
   }
 }
 
-function standingOf(db: Database, studioId: number, { id, promisedAt }: typeof order.$inferSelect): PromiseStanding | null {
+function standingOf(db: Database, studioId: number, { id, promisedAt, tell }: typeof order.$inferSelect): PromiseStanding | null {
   if (promisedAt === null) return null
   const last = db.select({ madeAt: promise.madeAt }).from(promise).where(scoped(promise, studioId, eq(promise.orderId, id))).orderBy(desc(promise.id)).get()
   const watch = db.select({ watch: promiseWatch, rescue: batch.name }).from(promiseWatch).leftJoin(batch, eq(batch.id, promiseWatch.rescueBatchId)).where(scoped(promiseWatch, studioId, eq(promiseWatch.orderId, id))).get()
-  return { promisedAt, madeAt: last?.madeAt ?? null, slipping: watch?.watch.slipping ?? false, cause: watch?.watch.cause ?? null, cautiousAt: watch?.watch.dateAt ?? null, rescue: watch?.rescue ?? null }
+  return { promisedAt, madeAt: last?.madeAt ?? null, slipping: watch?.watch.slipping ?? false, cause: watch?.watch.cause ?? null, cautiousAt: watch?.watch.dateAt ?? null, rescue: watch?.rescue ?? null, tell }
 }
 
-/** Promises that slip, as the watch last found them, by order. */
-export function slippingPromises(db: Database, studioId: number): Map<number, PromiseStanding> {
+/** Promises that slip, as the watch last found them, by order. `tells`: whether the reader may know who is to hear of it. */
+export function slippingPromises(db: Database, studioId: number, tells: boolean): Map<number, PromiseStanding> {
   const rows = db.select({ order }).from(promiseWatch).innerJoin(order, eq(order.id, promiseWatch.orderId)).where(and(scoped(promiseWatch, studioId, eq(promiseWatch.slipping, true)), isNull(order.closedAt))).all()
   return new Map(rows.flatMap(({ order: row }) => {
     const standing = standingOf(db, studioId, row)
-    return standing ? [[row.id, standing] as const] : []
+    return standing ? [[row.id, tells ? standing : { ...standing, tell: null }] as const] : []
   }))
 }
 
@@ -122,7 +122,8 @@ export async function makePromise(db: Database, studioId: number, batchId: numbe
     // A new promise is watched from the beginning: what slipped before was another date.
     tx.delete(promiseWatch).where(scoped(promiseWatch, studioId, eq(promiseWatch.orderId, orderId))).run()
   })
-  return { ...state, order: own.order?.name ?? request.orderName ?? null, tell: tell === undefined ? state.tell : tell, standing: { promisedAt: dateAt, madeAt: now, slipping: false, cause: null, cautiousAt: null, rescue: null } }
+  const named = tell === undefined ? state.tell : tell
+  return { ...state, order: own.order?.name ?? request.orderName ?? null, tell: named, standing: { promisedAt: dateAt, madeAt: now, slipping: false, cause: null, cautiousAt: null, rescue: null, tell: named } }
 }
 
 /** An open order of that name takes the batch in, as at the start of a batch. */

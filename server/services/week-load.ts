@@ -18,8 +18,8 @@ const daysShown = 7
 
 interface Span { from: number, to: number }
 
-/** Load against capacity for the coming seven days, batches against their dates, and what that rests on. `now` in ms UTC. */
-export function weekLoad(db: Database, studioId: number, now: number): WeekState | null {
+/** Load against capacity for the coming seven days, batches against their dates, and what that rests on. `now` in ms UTC; `tells`: whether the reader may know whom a slip is told to. */
+export function weekLoad(db: Database, studioId: number, now: number, tells = false): WeekState | null {
   const facts = readPlanFacts(db, studioId)
   if (!facts) return null
   const zone = studioZone(facts.owner.zone)
@@ -29,7 +29,7 @@ export function weekLoad(db: Database, studioId: number, now: number): WeekState
   return {
     at: now, planMadeAt: current?.madeAt ?? null, days,
     people: peopleLoad(db, facts, days, spans, zone), places: placeLoad(facts, spans, now),
-    batches: batchLoads(db, facts, now), clashes: current?.clashes ?? [], evidence: evidenceOf(db, studioId),
+    batches: batchLoads(db, facts, now, tells), clashes: current?.clashes ?? [], evidence: evidenceOf(db, studioId),
   }
 }
 
@@ -107,14 +107,14 @@ function placeLoad(facts: PlanFacts, spans: readonly Span[], now: number): Place
   })
 }
 
-function batchLoads(db: Database, facts: PlanFacts, now: number): BatchLoad[] {
+function batchLoads(db: Database, facts: PlanFacts, now: number, tells: boolean): BatchLoad[] {
   const rows = db.select({ id: batch.id, name: batch.name, beganAt: batch.startsAt, order: order.name, orderId: order.id, dueAt: order.dueAt }).from(batch).leftJoin(order, eq(order.id, batch.orderId))
     .where(scoped(batch, facts.owner.id, isNull(batch.closedAt))).orderBy(asc(batch.startsAt), asc(batch.id)).all()
   const batchOf = new Map(facts.pieces.map(each => [each.id, each.batchId]))
   const pieceOf = new Map(facts.steps.map(step => [step.id, step.pieceId]))
   const entries = new Map(facts.last.map(entry => [entry.turnId, entry]))
   const doubts = doubtOfFilms(db, facts.owner.id, now)
-  const slipping = slippingPromises(db, facts.owner.id)
+  const slipping = slippingPromises(db, facts.owner.id, tells)
   return rows.flatMap(({ orderId, ...row }) => {
     const pieces = facts.pieces.filter(each => each.batchId === row.id)
     if (pieces.length === 0) return []

@@ -53,8 +53,8 @@ export interface DateEstimate {
   basis: PromiseBasis
 }
 
-/** How a promised date stands by the newest plan. `rescue`: the batch that would save it, moved back. */
-export interface PromiseStanding { promisedAt: number, madeAt: number | null, slipping: boolean, cause: PromiseCause | null, cautiousAt: number | null, rescue: string | null }
+/** How a promised date stands by the newest plan. `rescue`: the batch that would save it, moved back. `tell`: who is to hear of a slip; null where nobody is named or the reader may not promise. */
+export interface PromiseStanding { promisedAt: number, madeAt: number | null, slipping: boolean, cause: PromiseCause | null, cautiousAt: number | null, rescue: string | null, tell: string | null }
 
 /** GET /api/batches/7/promise: the order of a batch, when it will be ready, and what was promised. `estimate` null with `why`: nobody can say. */
 export interface PromiseState {

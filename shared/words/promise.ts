@@ -141,7 +141,7 @@ export function standingText({ promisedAt, slipping, cause, cautiousAt }: Promis
 export const rescueText = (rescue: string | null) => rescue === null ? 'No other batch, moved back alone, would save the date.' : `Say no to it, or move ${rescue} back: then the date holds.`
 
 /** Of a promise that slips, beside its batch: how it stands, whom to tell and what would save it. */
-export const slipText = (order: string, standing: PromiseStanding, clock: Clock) => `${standingText(standing, clock)} Tell whoever ordered ${order}. ${rescueText(standing.rescue)}`
+export const slipText = (order: string, standing: PromiseStanding, clock: Clock) => `${standingText(standing, clock)} Tell ${standing.tell ?? `whoever ordered ${order}`}. ${rescueText(standing.rescue)}`
 
 /** "by Tue 8 Dec 100 of 200 are ready": the picture in one sentence. */
 export function pictureText({ days, scenarios, likelyAt, promiseAt }: DateEstimate, clock: Clock): string {

@@ -200,5 +200,11 @@ describe('a promise', () => {
     expect(row?.slipping).toMatchObject({ slipping: true, rescue: expect.any(String) })
     if (!row?.slipping) throw new Error('The row of a batch whose promise slips says so.')
     expect(slipText('Fair', row.slipping, { now, zone: studioZone('UTC') })).toMatch(/^Promised .*\. It slips: nine of ten ways take till .*\. Tell whoever ordered Fair\. Say no to it, or move \w+ back: then the date holds\.$/)
+    // Who is to hear of it is named as in the call, to those who may promise.
+    db.update(order).set({ tell: 'Wren, 555 0100' }).run()
+    const slippingFor = (tells: boolean) => weekLoad(db, studioId, now + minute, tells)?.batches.find(each => each.id === studio.batchId)?.slipping
+    expect(slippingFor(false)?.tell).toBeNull()
+    const told = slippingFor(true)
+    expect(told && slipText('Fair', told, { now, zone: studioZone('UTC') })).toContain('. Tell Wren, 555 0100. ')
   })
 })
