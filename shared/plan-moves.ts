@@ -20,7 +20,8 @@ export type MoveCause =
   | { code: 'step added', step: string }
   | { code: 'hours', name: string | null }
   | { code: 'hands', name: string | null, step: string, batch: string, added: boolean, because?: MoveCause | null }
-  | { code: 'freed', name: string | null, step: string, batch: string }
+  | { code: 'freed', name: string | null, step: string, batch: string, gone?: 'done' | 'dropped' | null }
+  | { code: 'done before', step: string }
   | { code: 'place', kind: PlaceKind }
   | { code: 'dust', step: string | null }
   | { code: 'vapour', step: string }

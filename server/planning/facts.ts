@@ -54,8 +54,11 @@ function readLast(db: Database, studioId: number) {
     .map(({ entry }) => ({ ...entry, memberIds: [...entry.memberId === null ? [] : [entry.memberId], ...(mates.get(entry.turnId) ?? []).map(({ mate }) => mate.memberId)] }))
   const lastChanges = db.select({ change: planChange }).from(plan).innerJoin(planChange, eq(planChange.planId, plan.id)).where(inForce).all().map(row => row.change)
   const lastHolds = db.select({ hold: planHold }).from(plan).innerJoin(planHold, eq(planHold.planId, plan.id)).where(inForce).all().map(row => row.hold)
+  const over = sql`(${turn.status} in ('done', 'left out') or ${pieceStep.status} in ('done', 'set aside', 'left out') or ${piece.goneAt} is not null or ${batch.closedAt} is not null)`
+  const lastOver = db.select({ turnId: turn.id, stepId: turn.stepId, status: turn.status, step: pieceStep.name, batch: batch.name }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).innerJoin(turn, eq(turn.id, planEntry.turnId))
+    .innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).innerJoin(piece, eq(piece.id, pieceStep.pieceId)).innerJoin(batch, eq(batch.id, piece.batchId)).where(and(inForce, over)).all()
   const pins = db.select().from(pin).where(scoped(pin, studioId)).all()
-  return { last, lastChanges, lastHolds, pins }
+  return { last, lastChanges, lastHolds, lastOver, pins }
 }
 
 /** The material editions that coats to come will need times for. */

@@ -1,5 +1,6 @@
 import { dustKeptOff } from '~~/server/planning/dust'
 import type { PlanFacts } from '~~/server/planning/facts'
+import { FreedCauses } from '~~/server/planning/freed-causes'
 import { activityId, handsId, memberIdOf, turnIdOf } from '~~/server/planning/ids'
 import type { StepWork } from '~~/server/planning/lags'
 import type { StudioProblem } from '~~/server/planning/problem'
@@ -37,6 +38,7 @@ export class MoveCauses {
   private readonly pieces: Map<number, PlanFacts['pieces'][number]>
   private readonly shutFrom: Map<string, number>
   private readonly dustFrom: Map<string, number>
+  private readonly freed: FreedCauses
 
   constructor(private readonly compared: Compared) {
     const { facts, given, made, toCome } = compared
@@ -48,6 +50,7 @@ export class MoveCauses {
     this.pieces = new Map(facts.pieces.map(each => [each.id, each]))
     this.knownBatches = new Set(given.works.flatMap(work => work.turns.some(turn => this.last.has(turn.id)) ? [this.batchOf(work)?.batchId ?? 0] : []))
     this.shutFrom = new Map(keptOut(given.works, facts, toCome.shut, given.hands, given.zeroAt).map(lag => [lag.to, lag.min ?? 0]))
+    this.freed = new FreedCauses(compared)
     this.dustFrom = new Map(dustKeptOff(given.works, facts, given.zeroAt).map(lag => [lag.to, lag.min ?? 0]))
   }
 
@@ -58,7 +61,7 @@ export class MoveCauses {
     const pinned = this.pinned(spot)
     if (pinned) return pinned
     if (this.missedNow(spot)) return { code: 'window missed' }
-    const cause = spot.is > spot.was ? this.notReady(spot, 0) ?? this.forbidden(spot) : this.readySooner(spot) ?? this.freed(spot)
+    const cause = spot.is > spot.was ? this.notReady(spot, 0) ?? this.forbidden(spot) : this.sooner(spot, 0)
     return cause ?? { code: 'fits better' }
   }
 
@@ -227,30 +230,28 @@ export class MoveCauses {
     return null
   }
 
+  private sooner(spot: Spot, depth: number): MoveCause | null {
+    return this.readySooner(spot, depth) ?? this.freed.of(spot)
+  }
+
+  /** What it waited for in the last plan has been done since. */
+  private doneBefore({ work }: Spot, waitsFor: string | null): MoveCause | null {
+    const { facts } = this.compared
+    const before = new Set(facts.links.filter(link => link.toStepId === work.step.id).map(link => link.fromStepId))
+    const done = waitsFor === null ? facts.lastOver.find(each => each.status === 'done' && before.has(each.stepId)) : undefined
+    return done ? { code: 'done before', step: done.step } : null
+  }
+
   /** By the last reckoning it could not have begun so soon. */
-  private readySooner(spot: Spot): MoveCause | null {
+  private readySooner(spot: Spot, depth: number): MoveCause | null {
     const ready = this.compared.ready.get(spot.id)
     if (!ready || spot.wasReady === null || spot.is >= spot.wasReady - slack || ready.at >= spot.wasReady - slack) return null
     const before = ready.lag.from === null ? undefined : this.entries.get(ready.lag.from)
     const was = before && this.last.get(turnIdOf(before.activity))
-    if (before && was && before.start < this.minutes(was.startsAt) - slack) return { code: 'follows', step: this.works.get(before.activity)?.step.name ?? '', startsAt: this.instant(before.start), because: null }
-    return this.film('film sooner', spot, ready.at)
-  }
-
-  /** In the last plan everybody who may do it was taken at its new time. */
-  private freed({ activity, is, entry, turnId }: Spot): MoveCause | null {
-    const { facts, names } = this.compared
-    const choice = activity.choices[0]
-    if (!choice) return null
-    const [from, to] = [this.instant(is), this.instant(is + entry.end - entry.start)]
-    const taken = choice.of.map(hand => facts.last.find(each => each.memberIds.includes(memberIdOf(hand)) && each.turnId !== turnId && each.startsAt < to && each.endsAt > from))
-    if (taken.filter(each => each === undefined).length >= choice.count) return null
-    for (const each of taken) {
-      const work = each && this.works.get(activityId(each.turnId))
-      const now = each && this.entries.get(activityId(each.turnId))
-      const piece = work && this.batchOf(work)
-      if (each && piece && now && now.start !== this.minutes(each.startsAt)) return { code: 'freed', name: choice.of.length === 1 ? names.get(each.memberId ?? 0) ?? null : null, step: work.step.name, batch: piece.batch }
-    }
-    return null
+    if (!before || !was || before.start >= this.minutes(was.startsAt) - slack) return this.doneBefore(spot, ready.lag.from) ?? this.film('film sooner', spot, ready.at)
+    const startsAt = this.instant(before.start)
+    const earlier = this.spot(was.turnId, was.startsAt, startsAt)
+    const because = earlier && depth < deepest ? this.pinned(earlier) ?? this.sooner(earlier, depth + 1) : null
+    return because?.code === 'follows' ? because : { code: 'follows', step: this.works.get(before.activity)?.step.name ?? '', startsAt, because }
   }
 }

@@ -1,13 +1,13 @@
 import { and, eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { closure, openHours, plan, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
+import { batch, closure, member, openHours, plan, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { movedTurns } from '~~/server/services/plan-moves'
 import { copyAgain } from '~~/server/utils/database'
 import { predictPieces } from '~~/server/work/predict'
 import { studioZone } from '#shared/time'
 import { likeMoves } from '#shared/plan-moves'
-import { moveText } from '#shared/words/plan-moves'
+import { causeText, moveText } from '#shared/words/plan-moves'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
 
@@ -138,6 +138,38 @@ describe('what moved', () => {
     const told = movesAt(studio, early + minute)
     expect(told.length).toBeGreaterThan(0)
     expect(told.filter(each => JSON.stringify(each.why).includes('window missed'))).toEqual([])
+  })
+
+  it.each([
+    ['what is done', 'done', { code: 'freed', name: 'The maker', step: 'Cut and shoot the mitres', batch: 'Boxs', gone: 'done' }, /^The maker is free then, since “Cut and shoot the mitres” of Boxs is done$/],
+    ['a batch that is over', 'dropped', { code: 'freed', name: 'The maker', step: 'Cut and shoot the mitres', batch: 'Boxs', gone: 'dropped' }, /^The maker is free then, since “Cut and shoot the mitres” of Boxs is no longer to be done$/],
+  ] as const)('names %s where work moves sooner by it, which without that it would not', async (_, what, cause, says) => {
+    const early = now - 3 * hour
+    const studio = plannedStudio(early, 'mitred-frame', 2)
+    const { db, studioId } = studio
+    db.update(member).set({ leftAt: early - hour }).where(eq(member.role, 'owner')).run()
+    studio.batch('Tray', 1, 'mitred-frame', early)
+    await planAt(studio, early)
+    const stayed = { ...studio, db: copyAgain(db) }
+    if (what === 'done') studio.tell('work done', early, db.select().from(pieceStep).where(eq(pieceStep.name, cause.step)).get()?.key ?? '', studio.pieceIds)
+    else db.update(batch).set({ closedAt: early }).where(eq(batch.name, 'Boxs')).run()
+    for (const each of [studio, stayed]) expect(await replan(each.db, studioId, early + minute, atOnce, true)).toMatchObject({ ok: true })
+    const told = movesAt(studio, early + minute).filter(each => JSON.stringify(each.why) === JSON.stringify(cause))
+    expect(told.length).toBeGreaterThan(0)
+    for (const { why } of told) expect(causeText(why, { now: early, zone }, 'metric')).toMatch(says)
+    // What it claims, solved: made anew as well, but without that, none of them begins so soon.
+    for (const { turnId, isAt } of told) expect(startOf(stayed, turnId)).toBeGreaterThan(isAt)
+    stayed.db.$client.close()
+  })
+
+  it('says of work that may begin sooner that what comes before it is done already', async () => {
+    const early = now - 3 * hour
+    const studio = plannedStudio(early, 'oiled-bowl', 2)
+    await planAt(studio, early)
+    const [step] = studio.db.select().from(pieceStep).all().sort((a, b) => a.ordinal - b.ordinal)
+    studio.tell('work done', early, step?.key ?? '', studio.pieceIds)
+    expect(await replan(studio.db, studio.studioId, early + minute, atOnce, true)).toMatchObject({ ok: true })
+    expect(movesAt(studio, early + minute).map(each => each.why)).toContainEqual({ code: 'done before', step: step?.name })
   })
 
   it('names a pin as the root of what follows, also where nobody has told the pinned work', async () => {
