@@ -1,5 +1,4 @@
 import { defineNitroPlugin } from 'nitropack/runtime'
-import cron from 'node-cron'
 import { releaseHolds } from '~~/server/reminders/claim'
 import { openChannels } from '~~/server/reminders/channels'
 import { tick } from '~~/server/reminders/tick'
@@ -9,6 +8,7 @@ import { change } from '~~/server/utils/change'
 import { useConfig } from '~~/server/utils/config'
 import { useDatabase } from '~~/server/utils/database'
 import { whenReady } from '~~/server/utils/ready'
+import { goRounds } from '~~/server/utils/rounds'
 
 async function lookRound() {
   const db = useDatabase()
@@ -32,8 +32,8 @@ const complain = (error: unknown) => console.error('The calls could not be looke
 export default defineNitroPlugin((nitro) => {
   if (import.meta.prerender) return
   const boot = begin().catch(complain)
-  const task = cron.schedule('* * * * *', () => boot.then(lookRound).catch(complain), { noOverlap: true, timezone: 'UTC' })
+  const endRounds = goRounds('* * * * *', () => boot.then(lookRound).catch(complain))
   nitro.hooks.hook('close', async () => {
-    await task.destroy()
+    await endRounds()
   })
 })

@@ -1,5 +1,4 @@
 import { defineNitroPlugin } from 'nitropack/runtime'
-import cron from 'node-cron'
 import { studio } from '~~/db/schema'
 import { replan } from '~~/server/planning/replan'
 import { change } from '~~/server/utils/change'
@@ -8,6 +7,7 @@ import type { ChangeKind } from '~~/server/utils/bus'
 import { useDatabase } from '~~/server/utils/database'
 import { usePlanRunner } from '~~/server/utils/planRunner'
 import { whenReady } from '~~/server/utils/ready'
+import { goRounds } from '~~/server/utils/rounds'
 import { predictPieces } from '~~/server/work/predict'
 
 /** Changes that move a plan. A plan of its own and the calls that follow it do not. */
@@ -53,11 +53,11 @@ export default defineNitroPlugin((nitro) => {
   if (import.meta.prerender) return
   const stopListening = onChange(({ studioId, kind }) => moving.has(kind) && planSoon(studioId))
   const boot = whenReady().then(lookRound).catch((error: unknown) => console.error('The studios could not be planned.', error))
-  const task = cron.schedule('*/5 * * * *', () => boot.then(lookRound), { noOverlap: true, timezone: 'UTC' })
+  const endRounds = goRounds('*/5 * * * *', () => boot.then(lookRound))
   nitro.hooks.hook('close', async () => {
     stopListening()
     for (const timer of waiting.values()) clearTimeout(timer)
-    await task.destroy()
+    await endRounds()
     await usePlanRunner().close()
   })
 })

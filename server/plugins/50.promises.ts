@@ -1,11 +1,11 @@
 import { defineNitroPlugin } from 'nitropack/runtime'
-import cron from 'node-cron'
 import { studio } from '~~/db/schema'
 import { watchPromises } from '~~/server/planning/promise-watch'
 import { tellingListener } from '~~/server/reminders/wanted'
 import { useAsker } from '~~/server/utils/asker'
 import { useDatabase } from '~~/server/utils/database'
 import { whenReady } from '~~/server/utils/ready'
+import { goRounds } from '~~/server/utils/rounds'
 
 /** One studio after another: a promise that begins to slip is called at the next look at the calls. */
 async function lookRound() {
@@ -24,9 +24,9 @@ const complain = (error: unknown) => console.error('The promises could not be lo
 
 export default defineNitroPlugin((nitro) => {
   if (import.meta.prerender) return
-  const task = cron.schedule('* * * * *', () => whenReady().then(lookRound).catch(complain), { noOverlap: true, timezone: 'UTC' })
+  const endRounds = goRounds('* * * * *', () => whenReady().then(lookRound).catch(complain))
   nitro.hooks.hook('close', async () => {
-    await task.destroy()
+    await endRounds()
     await useAsker().close()
   })
 })

@@ -1,8 +1,8 @@
 import { defineNitroPlugin } from 'nitropack/runtime'
-import cron from 'node-cron'
 import { useConfig } from '~~/server/utils/config'
 import { useDatabase } from '~~/server/utils/database'
 import { whenReady } from '~~/server/utils/ready'
+import { goRounds } from '~~/server/utils/rounds'
 import { addressSource } from '~~/server/weather/source'
 import { takeWeather } from '~~/server/weather/take'
 
@@ -15,8 +15,8 @@ export default defineNitroPlugin((nitro) => {
   const look = () => whenReady().then(() => source.hours()).then(hours => takeWeather(useDatabase(), hours, Date.now()))
     .catch(error => console.error('The weather could not be taken.', error instanceof Error ? error.message : error))
   void look()
-  const task = cron.schedule('7 * * * *', () => look(), { noOverlap: true, timezone: 'UTC' })
+  const endRounds = goRounds('7 * * * *', () => look())
   nitro.hooks.hook('close', async () => {
-    await task.destroy()
+    await endRounds()
   })
 })
