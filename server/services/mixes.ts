@@ -11,7 +11,7 @@ import { impossible, malformed } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { scoped } from '~~/server/utils/scoped'
 import type { Edition } from '#shared/data-sheet/complete'
-import { mixedEdition } from '#shared/data-sheet/mix'
+import { mixedEdition, withoutName } from '#shared/data-sheet/mix'
 import type { MixBody, MixPartsBody } from '#shared/schemas/material-edit'
 import { mixRefusals } from '#shared/words/mixes'
 
@@ -38,7 +38,8 @@ function editionOfParts(tx: Transaction, studioId: number, { parts }: Parts, own
   const editions = readEditions(tx, studioId, versions)
   const mixed = parts.flatMap((part) => {
     const edition = editions.get(versions.find(each => each.materialId === part.materialId)?.id ?? 0)
-    return edition ? [{ parts: part.parts, edition }] : []
+    const name = part.private ? rows.find(each => each.id === part.materialId)?.name : undefined
+    return edition ? [{ parts: part.parts, edition: name === undefined ? edition : withoutName(edition, name) }] : []
   })
   if (new Set(mixed.map(each => each.edition.film)).size > 1) return impossible(mixRefusals.films, { parts: mixRefusals.films })
   return mixedEdition(mixed)

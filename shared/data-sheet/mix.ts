@@ -1,12 +1,24 @@
 import { withCautions } from '#shared/data-sheet/complete'
 import type { Edition } from '#shared/data-sheet/complete'
+import { findCaution } from '#shared/library/cautions'
 import { contentsOf } from '#shared/library/required-cautions'
 import type { FigureName, Solvent } from '#shared/library/types'
 import type { FigureWire, RungWire, WindowWire } from '#shared/schemas/material-sheet'
 import { milestoneNames } from '#shared/terms'
 import { sheetSources } from '#shared/words/data-sheet'
+import { mixWords } from '#shared/words/mixes'
 
 interface MixedPart { parts: number, edition: Edition }
+
+/**
+ * A private part's edition as its mix may hold it: what the studio wrote of its hazards is said to everybody, without the name.
+ * @param name the part's own; wherever it is written, in small or large letters, the words for an unnamed part stand instead
+ */
+export function withoutName(edition: Edition, name: string): Edition {
+  const named = new RegExp(name.replaceAll(/[.*+?^${}()|[\]\\]/g, '\\$&'), 'gi')
+  const unnamed = (caution: string) => caution.replaceAll(named, (_, at: number) => /(^|[.!?]\s+)$/.test(caution.slice(0, at)) ? mixWords.unnamedFirst : mixWords.unnamed)
+  return { ...edition, cautions: edition.cautions.map(each => findCaution(each) ? each : unnamed(each)) }
+}
 
 /** From the thinner that asks for least care to the one that asks for most. */
 const thinners: readonly Solvent[] = ['none', 'water', 'mineral spirits', 'turpentine', 'aliphatic solvent', 'alcohol', 'lacquer thinner']
