@@ -2,6 +2,7 @@ import { randomInt } from 'node:crypto'
 import { and, eq, gt, isNotNull, isNull } from 'drizzle-orm'
 import { benchTablet, member, person, room } from '~~/db/schema'
 import type { Bench, StudioRow } from '~~/server/services/sessions'
+import { stillListed } from '~~/server/services/still-listed'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, impossible, malformed } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
@@ -14,11 +15,13 @@ import { settings } from '#shared/words/settings'
 
 const iso = (at: number | null) => (at === null ? null : new Date(at).toISOString())
 const chance = () => randomInt(2 ** 40) / 2 ** 40
+/** A code, and till when it signs a device in, ms UTC. */
+const newCode = (now: number) => ({ code: makePairCode(chance), pairsTill: now + pairMinutes * 60_000 })
 const standing = (id: number, studioId: number) => and(owned(benchTablet, studioId, id), isNull(benchTablet.revokedAt))
 
-/** All tablets that were made, the ended ones too. */
-export function listBenchTablets(db: Database, studioId: number): BenchTabletWire[] {
-  return db.select().from(benchTablet).where(scoped(benchTablet, studioId)).orderBy(benchTablet.id).all()
+/** All tablets that stand, and those ended of late. */
+export function listBenchTablets(db: Database, studioId: number, now: number): BenchTabletWire[] {
+  return db.select().from(benchTablet).where(scoped(benchTablet, studioId, stillListed(benchTablet.revokedAt, now))).orderBy(benchTablet.id).all()
     .map(({ id, name, roomId, lockMin, madeAt, pairsTill, pairedAt, revokedAt }) => ({ id, name, roomId, lockMin, madeAt: new Date(madeAt).toISOString(), pairsTill: iso(pairsTill), pairedAt: iso(pairedAt), revokedAt: iso(revokedAt) }))
 }
 
@@ -29,10 +32,16 @@ const noRoom = (tx: Transaction | Database, studioId: number, roomId: number | n
 export function createBenchTablet(db: Database, studioId: number, body: BenchTabletBody, now: number): { ok: true, id: number, code: string, till: string } | Refusal {
   const wrong = noRoom(db, studioId, body.roomId)
   if (wrong) return wrong
-  const code = makePairCode(chance)
-  const pairsTill = now + pairMinutes * 60_000
+  const { code, pairsTill } = newCode(now)
   const { id } = db.insert(benchTablet).values({ studioId, ...body, tokenHash: hashToken(code), madeAt: now, pairsTill }).returning({ id: benchTablet.id }).get()
   return { ok: true, id, code, till: new Date(pairsTill).toISOString() }
+}
+
+/** Makes a new code for a tablet that no device is signed in as yet; the code before signs nothing in any more. */
+export function renewPairCode(db: Database, studioId: number, id: number, now: number): { ok: true, id: number, code: string, till: string } | Refusal {
+  const { code, pairsTill } = newCode(now)
+  const done = db.update(benchTablet).set({ tokenHash: hashToken(code), pairsTill }).where(and(standing(id, studioId), isNull(benchTablet.pairedAt))).run()
+  return done.changes > 0 ? { ok: true, id, code, till: new Date(pairsTill).toISOString() } : absent(benchRefusals.noCode)
 }
 
 /** Changes what is given of a tablet that is not ended. */

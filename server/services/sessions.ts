@@ -1,4 +1,4 @@
-import { and, eq, gt, isNull } from 'drizzle-orm'
+import { and, eq, gt, isNull, ne } from 'drizzle-orm'
 import type { SQL } from 'drizzle-orm'
 import { benchTablet, member, memberStepKind, person, session, studio, wallLink } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
@@ -41,6 +41,12 @@ export function openSession(db: Database | Transaction, personId: number, studio
 /** Ends a session for good; its cookie opens nothing any more. */
 export function revokeSession(db: Database, sessionHash: string, now: number): void {
   db.update(session).set({ revokedAt: now }).where(and(eq(session.idHash, sessionHash), isNull(session.revokedAt))).run()
+}
+
+/** Ends every other session of a person: whatever browser is left signed in elsewhere is signed out. Returns how many stood. */
+export function revokeOtherSessions(db: Database, personId: number, sessionHash: string, now: number): number {
+  return db.update(session).set({ revokedAt: now })
+    .where(and(eq(session.personId, personId), ne(session.idHash, sessionHash), isNull(session.revokedAt), gt(session.expiresAt, now))).run().changes
 }
 
 const findMembership = (db: Database, personId: number, studioId: number) => membershipWhere(db, studioId, eq(member.personId, personId))

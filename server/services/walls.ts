@@ -1,5 +1,6 @@
 import { eq, isNull } from 'drizzle-orm'
 import { wallLink } from '~~/db/schema'
+import { stillListed } from '~~/server/services/still-listed'
 import type { Database } from '~~/server/utils/database'
 import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
@@ -16,8 +17,9 @@ export function createWallLink(db: Database, studioId: number, name: string, now
   return { ok: true, id, token }
 }
 
-export function listWallLinks(db: Database, studioId: number): WallLinkWire[] {
-  return db.select().from(wallLink).where(scoped(wallLink, studioId)).orderBy(wallLink.id).all()
+/** All links that stand, and those ended of late. */
+export function listWallLinks(db: Database, studioId: number, now: number): WallLinkWire[] {
+  return db.select().from(wallLink).where(scoped(wallLink, studioId, stillListed(wallLink.revokedAt, now))).orderBy(wallLink.id).all()
     .map(({ id, name, madeAt, revokedAt }) => ({ id, name, madeAt: new Date(madeAt).toISOString(), revokedAt: iso(revokedAt) }))
 }
 

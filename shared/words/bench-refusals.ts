@@ -16,6 +16,7 @@ export const benchRefusals = {
   solventWantsPerson: 'Solvent work is begun by a named person, who opens the room again. Say who you are with your PIN.',
   ownBench: 'Only what was told at the bench without a name can be taken back here without one.',
   absent: 'There is no such bench tablet in this studio.',
+  noCode: 'A new code is for a tablet that waits to be signed in; there is no such tablet here. Set up another one.',
   name: 'Give the tablet a name, such as the bench it stands on.',
   lockMin: 'The time until it locks is a whole number of minutes from 1 to 60.',
   member: 'Choose who you are.',

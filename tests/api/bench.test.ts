@@ -79,6 +79,28 @@ describe('setting a tablet up', () => {
     expect(JSON.stringify(query('select * from bench_tablet'))).not.toContain(made.code)
   })
 
+  it('gets a new code while no device is signed in, and the code before opens nothing any more', async () => {
+    const made = body(await maker.post<{ id: number, code: string }>('/api/bench-tablets', { name: 'Slow bench', roomId: null, lockMin: 5 }))
+    write('update bench_tablet set pairs_till = ? where id = ?', Date.now() - 1, made.id)
+    const anew = body(await maker.post<{ code: string }>(`/api/bench-tablets/${made.id}/code`))
+    expect((await visitor(server.origin).post('/api/bench/pair', { code: made.code })).status).toBe(422)
+    expect((await visitor(server.origin).post('/api/bench/pair', { code: anew.code })).status).toBe(200)
+    expect((await maker.post(`/api/bench-tablets/${made.id}/code`)).status).toBe(404)
+  })
+
+  it('is listed for a week once it is ended, as a wall link is', async () => {
+    const { id } = await benchTabletOf(server.origin, maker, 'Old bench')
+    const wall = body(await owner.post<{ id: number }>('/api/wall-links', { name: 'Old wall' })).id
+    await maker.delete(`/api/bench-tablets/${id}`)
+    await owner.delete(`/api/wall-links/${wall}`)
+    const listed = async () => [body(await maker.get<{ id: number }[]>('/api/bench-tablets')).some(each => each.id === id), body(await owner.get<{ id: number }[]>('/api/wall-links')).some(each => each.id === wall)]
+    expect(await listed()).toEqual([true, true])
+    const before = Date.now() - 8 * 24 * 60 * 60_000
+    write('update bench_tablet set revoked_at = ? where id = ?', before, id)
+    write('update wall_link set revoked_at = ? where id = ?', before, wall)
+    expect(await listed()).toEqual([false, false])
+  })
+
   it('refuses a room of nobody, minutes out of reach, and a helper', async () => {
     expect((await maker.post('/api/bench-tablets', { name: 'x', roomId: 999, lockMin: 5 })).status).toBe(400)
     expect((await maker.post('/api/bench-tablets', { name: 'x', roomId: null, lockMin: 0 })).status).toBe(400)

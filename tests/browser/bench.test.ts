@@ -2,6 +2,7 @@ import type { Locator } from 'playwright-core'
 import { describe, expect, it } from 'vitest'
 import { axeProblems, openPage, visit } from '../helpers/browser'
 import { bench, dialog, line, made, memberId, minute, newestAct, openForBench, piecesNow, portrait, rows, small, standBenchStudio, startBatch, tabletPage, told, typePin } from '../helpers/bench-studio'
+import { visitor } from '../helpers/sign-in'
 
 standBenchStudio()
 
@@ -29,12 +30,28 @@ describe('signing a tablet in', () => {
     await page.getByLabel('Code').fill(code.toLowerCase())
     await page.getByRole('button', { name: 'Sign the tablet in' }).click()
     await page.getByText('Locked, Window bench').waitFor()
+    // The settings see that the code is used up, and show it no more.
+    await settings.page.getByText('Window bench is signed in.').waitFor()
+    expect(await settings.page.getByText(code, { exact: true }).count()).toBe(0)
     // Ended in the settings, it shows nothing with its next word.
     await settings.page.getByRole('button', { name: 'End it: Window bench' }).click()
     await dialog(settings.page).getByRole('button', { name: 'End it' }).click()
     await settings.page.getByText(/ended /).waitFor()
     await visit(page, '/bench')
     await page.getByLabel('Code').waitFor()
+  })
+
+  it('takes a new code by one key where the first ran out', async () => {
+    const id = (await made(bench.maker, '/api/bench-tablets', { name: 'Slow bench', roomId: null, lockMin: 5 })).id
+    const { page } = await openPage(bench.browser, bench.server.origin, {}, bench.maker)
+    await visit(page, '/settings/tablets')
+    await page.getByRole('button', { name: 'New code for Slow bench' }).click()
+    await page.getByRole('heading', { name: 'Code for Slow bench' }).waitFor()
+    const code = await page.getByText(/^[346789CDFGHJKMNPQRTVWXY]{4}-[346789CDFGHJKMNPQRTVWXY]{4}$/).textContent()
+    expect((await visitor(bench.server.origin).post('/api/bench/pair', { code })).status).toBe(200)
+    await page.getByText('Slow bench is signed in.').waitFor()
+    expect(await page.getByRole('button', { name: 'New code for Slow bench' }).count()).toBe(0)
+    await bench.maker.delete(`/api/bench-tablets/${id}`)
   })
 
   it('takes a PIN from whoever it is for, typed twice', async () => {

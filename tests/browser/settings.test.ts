@@ -3,7 +3,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
 import { startServer } from '../helpers/server'
 import type { TestServer } from '../helpers/server'
-import { firstStudio, joinAs } from '../helpers/sign-in'
+import { firstStudio, joinAs, signIn } from '../helpers/sign-in'
 import type { Visitor } from '../helpers/sign-in'
 
 let server: TestServer
@@ -192,6 +192,37 @@ describe('who sees what', () => {
     await visit(page, '/settings/hours')
     expect(await page.getByRole('button', { name: 'Save' }).count()).toBe(0)
     expect((await helper.get('/api/wall-links')).status).toBe(403)
+  })
+})
+
+describe('one’s own sign-in', () => {
+  it('is ended everywhere else by one key, and an open page elsewhere asks to sign in', async () => {
+    const [here, elsewhere] = [await signIn(server.origin, 'hazel@example.test'), await signIn(server.origin, 'hazel@example.test')]
+    const phone = await openPage(browser, server.origin, {}, elsewhere)
+    await visit(phone.page, '/board')
+    const { page } = await openPage(browser, server.origin, {}, here)
+    await visit(page, '/settings')
+    await page.getByRole('button', { name: 'Sign out everywhere else' }).click()
+    await page.getByRole('dialog').getByText('a lost phone too').waitFor()
+    expect(await axeProblems(page)).toEqual([])
+    await page.getByRole('dialog').getByRole('button', { name: 'Sign out everywhere else' }).click()
+    await page.getByText(/^Signed out in \d+ other places?\.$/).waitFor()
+    await phone.page.reload()
+    expect(new URL(phone.page.url()).pathname).toBe('/sign-in')
+    await visit(page, '/board')
+    expect(new URL(page.url()).pathname).toBe('/board')
+    helper = here
+  })
+})
+
+describe('an address of something that is not there', () => {
+  it.each(['/materials/9999', '/materials/edit/9999', '/schedules/9999', '/schedules/9999/edit', '/schedules/9999/editions', '/print/batch/9999', '/print/pieces/9999', '/pieces/9999', '/nothing'])('%s says so and leads back', async (path) => {
+    const { page } = await openPage(browser, server.origin, {}, owner)
+    expect((await page.goto(path))?.status()).toBe(404)
+    await page.getByRole('heading', { name: 'There is nothing at this address.' }).waitFor()
+    expect(await page.getByRole('button', { name: 'Try again' }).count()).toBe(0)
+    expect(await axeProblems(page)).toEqual([])
+    await page.context().close()
   })
 })
 

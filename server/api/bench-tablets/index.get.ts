@@ -1,8 +1,8 @@
 import { listBenchTablets } from '~~/server/services/bench-tablets'
 import { defineStudioHandler } from '~~/server/utils/handler'
 
-/** GET /api/bench-tablets: all that were made, the ended ones too. */
+/** GET /api/bench-tablets: all that stand, and those ended of late. */
 export default defineStudioHandler({
   may: 'set up tablets',
-  run: ({ db, studio }) => listBenchTablets(db, studio.id),
+  run: ({ db, studio, now }) => listBenchTablets(db, studio.id, now),
 })

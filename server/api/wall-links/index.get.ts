@@ -1,8 +1,8 @@
 import { defineStudioHandler } from '~~/server/utils/handler'
 import { listWallLinks } from '~~/server/services/walls'
 
-/** GET /api/wall-links: all that were made, the revoked ones too. */
+/** GET /api/wall-links: all that stand, and those ended of late. */
 export default defineStudioHandler({
   may: 'change settings',
-  run: ({ db, studio }) => listWallLinks(db, studio.id),
+  run: ({ db, studio, now }) => listWallLinks(db, studio.id, now),
 })

@@ -38,6 +38,8 @@ export const routes: Record<string, RouteCase> = {
   'auth/session.get.ts': { least: 'anyone', apart: 'view' },
   'auth/sign-in.post.ts': { least: 'anyone', apart: 'none', body: () => ({ email: 'nobody@example.test', password: 'wrong' }) },
   'auth/sign-out.post.ts': { least: 'anyone', apart: 'none' },
+  // One's own sessions are all it can end.
+  'auth/sign-out-elsewhere.post.ts': { least: 'signed in', apart: 'none' },
   'auth/studio.post.ts': { least: 'signed in', apart: 'named', body: () => ({ studioId: 1 }) },
   'auth/forgotten.post.ts': { least: 'anyone', apart: 'none', body: () => ({ email: 'nobody@example.test' }) },
   // A link's secret opens it to whoever holds it: that is what it is for.
@@ -66,6 +68,7 @@ export const routes: Record<string, RouteCase> = {
   'bench-tablets/index.get.ts': { least: 'maker', apart: 'view' },
   'bench-tablets/index.post.ts': { least: 'maker', apart: 'named', body: rows => ({ name: 'Long bench', roomId: rows.room, lockMin: 5 }) },
   'bench-tablets/[id].patch.ts': { least: 'maker', apart: 'row', at: 'benchTablet', body: () => ({ lockMin: 2 }) },
+  'bench-tablets/[id]/code.post.ts': { least: 'maker', apart: 'row', at: 'benchTablet' },
   'bench-tablets/[id].delete.ts': { least: 'maker', apart: 'row', at: 'benchTablet' },
   'own-pin/index.get.ts': { least: 'helper', apart: 'view' },
   // Everybody sets and ends their own PIN and nobody another's.

@@ -78,6 +78,17 @@ describe('signing out', () => {
   })
 })
 
+describe('signing out everywhere else', () => {
+  it('ends one’s own sessions elsewhere, and neither this one nor anybody else’s', async () => {
+    const [here, phone, other] = [await signIn(server.origin, 'wren@example.test'), await signIn(server.origin, 'wren@example.test'), await joinAs(server.origin, owner, 'helper', 'rowan@example.test')]
+    const { body } = await here.post<{ ended: number }>('/api/auth/sign-out-elsewhere')
+    expect(body.ended).toBeGreaterThan(0)
+    expect([await here.get('/api/state'), await phone.get('/api/state'), await other.get('/api/state')].map(answer => answer.status)).toEqual([200, 401, 200])
+    expect((await here.post<{ ended: number }>('/api/auth/sign-out-elsewhere')).body.ended).toBe(0)
+    owner = here
+  })
+})
+
 describe('a request from another site', () => {
   it('changes nothing', async () => {
     const answer = await owner.send('PATCH', '/api/studio', { name: 'Taken over' }, { origin: 'https://elsewhere.test' })
