@@ -221,6 +221,8 @@ describe('an address of something that is not there', () => {
     expect((await page.goto(path))?.status()).toBe(404)
     await page.getByRole('heading', { name: 'There is nothing at this address.' }).waitFor()
     expect(await page.getByRole('button', { name: 'Try again' }).count()).toBe(0)
+    // Nothing went wrong at the server.
+    expect(server.log()).not.toContain(path)
     expect(await axeProblems(page)).toEqual([])
     await page.context().close()
   })
