@@ -1,11 +1,15 @@
 import type { FileType } from '#shared/file-types'
+import { eitherText } from '#shared/words/group'
 
-const typeNames: Record<FileType, string> = {
-  'application/pdf': 'a PDF', 'image/jpeg': 'a JPEG picture', 'image/png': 'a PNG picture', 'image/heic': 'a HEIC picture', 'image/webp': 'a WebP picture', 'image/gif': 'a GIF picture',
+/** What each type of picture is called; a file that is none is a PDF. */
+const pictureNames: Partial<Record<FileType, string>> = { 'image/jpeg': 'JPEG', 'image/png': 'PNG', 'image/heic': 'HEIC', 'image/webp': 'WebP', 'image/gif': 'GIF' }
+
+/** "a PDF", "a JPEG or PNG picture", "a PDF, or a JPEG or PNG picture". */
+function oneOf(types: readonly FileType[]): string {
+  const names = types.flatMap(type => pictureNames[type] ?? [])
+  const pictures = names.length > 0 ? [`a ${eitherText(names)} picture`] : []
+  return [...types.includes('application/pdf') ? ['a PDF'] : [], ...pictures].join(', or ')
 }
-
-/** "a PDF", "a JPEG picture". */
-const fileTypeText = (type: FileType) => typeNames[type]
 
 const megabyte = 1_000_000
 
@@ -14,15 +18,15 @@ export function fileSizeText(bytes: number): string {
   return bytes >= megabyte ? `${Number((bytes / megabyte).toFixed(1))} MB` : `${Math.max(1, Math.round(bytes / 1000))} kB`
 }
 
-const oneOf = (types: readonly FileType[]) => types.map(fileTypeText).join(' or ')
+const isPicture = (type: FileType) => pictureNames[type] !== undefined
 
 /** Why a file is not kept. */
 export const fileRefusals = {
   empty: 'The file is empty. Choose another.',
   tooLarge: (limit: number) => `The file is larger than ${fileSizeText(limit)}. Choose a smaller one.`,
-  heic: (wanted: readonly FileType[]) => `This is a HEIC picture, which many browsers cannot show. Save it as ${oneOf(wanted)} first; a phone’s camera settings call it “most compatible”.`,
-  otherType: (found: FileType, wanted: readonly FileType[]) => `This is ${fileTypeText(found)}. It must be ${oneOf(wanted)}.`,
-  unknownType: (wanted: readonly FileType[]) => `What is in this file is none we know, whatever its name says. It must be ${oneOf(wanted)}.`,
+  heic: (wanted: readonly FileType[]) => `This is a HEIC picture, which many browsers cannot show. Save it as ${oneOf(wanted.filter(isPicture))} first; a phone’s camera settings call it “most compatible”.`,
+  otherType: (found: FileType, wanted: readonly FileType[]) => `This is ${oneOf([found])}. It must be ${oneOf(wanted)}.`,
+  unknownType: (wanted: readonly FileType[]) => `What is in this file cannot be read here, whatever its name says. It must be ${oneOf(wanted)}.`,
   lost: 'The file itself is no longer in the storage folder. Put it back from a backup, or add it again.',
 } as const
 

@@ -16,6 +16,11 @@ export function listText(words: readonly string[]): string {
   return words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`
 }
 
+/** "a", "a or b", "a, b or c". */
+export function eitherText(words: readonly string[]): string {
+  return words.length < 2 ? words.join('') : `${words.slice(0, -1).join(', ')} or ${words.at(-1)}`
+}
+
 /** Word joiner: a line may break behind a dash, and "Ledgers 1–" alone says nothing. */
 const joiner = '\u2060'
 

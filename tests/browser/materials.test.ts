@@ -174,7 +174,7 @@ describe('a data sheet', () => {
     await visit(page, `/materials/${wax}`)
     const file = (name: string, text: string) => ({ name, mimeType: 'application/pdf', buffer: Buffer.from(text) })
     await page.getByLabel('Add a data sheet').setInputFiles(file('sheet.pdf', 'not a PDF at all'))
-    await page.getByText(/^.*What is in this file is none we know/).waitFor()
+    await page.getByText(/^.*What is in this file cannot be read here, whatever its name says/).waitFor()
     await page.getByLabel('Add a data sheet').setInputFiles(file('sheet.pdf', '%PDF-1.7 wax'))
     await page.getByRole('link', { name: 'Read sheet.pdf' }).waitFor()
     expect(await axeProblems(page)).toEqual([])

@@ -70,7 +70,7 @@ describe('photographs of a piece', () => {
     const { page } = await openPage(browser, server.origin, {}, helper)
     await visit(page, `/pieces/${pieceId}`)
     await choose(page, { name: 'phone.heic', mimeType: 'image/heic', buffer: Buffer.from(heicHeader) })
-    await page.getByText(/This is a HEIC picture, which many browsers cannot show\. Save it as a JPEG picture/).waitFor()
+    await page.getByText(/This is a HEIC picture, which many browsers cannot show\. Save it as a JPEG, PNG or WebP picture first/).waitFor()
     await page.getByRole('button', { name: 'Leave it' }).click()
     await choose(page, { name: 'half.jpg', mimeType: 'image/jpeg', buffer: picture.subarray(0, picture.length / 2) })
     await page.getByText(/The picture cannot be read/).waitFor()

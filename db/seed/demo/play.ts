@@ -1,5 +1,5 @@
 import { eq } from 'drizzle-orm'
-import { finishingSchedule, part, piece, planChange, planEntry, ragDuty } from '~~/db/schema'
+import { finishingSchedule, material, part, piece, planChange, planEntry, ragDuty, studio } from '~~/db/schema'
 import type { Calendar } from '~~/db/seed/demo/calendar'
 import type { DemoKey } from '~~/db/seed/demo/people'
 import type { PlaceKey, Places, RoomKey } from '~~/db/seed/demo/places'
@@ -7,6 +7,9 @@ import { atOnce, replan } from '~~/server/planning/replan'
 import { recordAct } from '~~/server/services/acts'
 import { startBatch } from '~~/server/services/batches'
 import { correctAct } from '~~/server/services/corrections'
+import { openTin } from '~~/server/services/learned'
+import { createMaterial } from '~~/server/services/material-sheets'
+import { createMix } from '~~/server/services/mixes'
 import { answerRags } from '~~/server/services/rags'
 import { pieceStates } from '~~/server/services/piece-states'
 import { addReading } from '~~/server/services/readings'
@@ -17,6 +20,7 @@ import { owned, scoped } from '~~/server/utils/scoped'
 import { leavesFilm } from '#shared/step-kinds'
 import type { ActRequest, CorrectionRequest, TellableKind } from '#shared/schemas/act'
 import type { BatchRequest } from '#shared/schemas/batch'
+import type { DataSheetBody } from '#shared/schemas/material-edit'
 import type { PieceState } from '#shared/schemas/piece-state'
 import type { ReadingRequest } from '#shared/schemas/reading'
 
@@ -53,6 +57,9 @@ export interface Tell {
   /** A name by which a later correction finds the act. */
   label?: string
 }
+
+/** A mix of one material of the library and one of the studio's own, in parts by volume. */
+export interface HouseMix { at: number, by: DemoKey, name: string, base: { key: string, parts: number }, own: DataSheetBody & { parts: number } }
 
 export interface Correct extends Pick<CorrectionRequest, 'takeBack'> { at: number, by?: DemoKey, label: string, doneAt?: number }
 
@@ -110,6 +117,19 @@ export class Player {
   read(room: RoomKey, by: DemoKey, at: number, air: Partial<ReadingRequest>) {
     const { db, studioId, rooms, people } = this.stage
     this.#done(`air of the ${room}`, addReading(db, studioId, people[by].id, rooms[room], { clientKey: this.key(), at: iso(at), tempC: null, rh: null, words: null, same: false, ...air }, at + minute))
+  }
+
+  /** Somebody types a data sheet of the studio's own, and mixes it with one of the library's; the studio's own part is private. A tin of the mix is on hand. */
+  mix({ at, by, name, base, own }: HouseMix) {
+    const { db, studioId, people } = this.stage
+    const owner = db.select().from(studio).where(eq(studio.id, studioId)).get()
+    const found = db.select({ id: material.id }).from(material).where(scoped(material, studioId, eq(material.libraryKey, base.key))).get()
+    if (!owner || !found) throw new Error(`The library has no material ${base.key}.`)
+    const { parts, ...sheet } = own
+    const kept = this.#done(own.name, createMaterial(db, owner, people[by], sheet, at))
+    const mixed = this.#done(name, createMix(db, studioId, people[by], { name, basis: 'volume', parts: [{ materialId: found.id, parts: base.parts, private: false }, { materialId: kept.id, parts, private: true }] }, at))
+    const opened = openTin(db, studioId, people[by], mixed.id, at)
+    if ('reason' in opened) throw new Error(`The demo's own services refuse a tin of "${name}".`)
   }
 
   /** Somebody says where the oily rags of a room are, if anybody asks. */

@@ -2,6 +2,8 @@ import { beforeAll, describe, expect, it } from 'vitest'
 import { eq } from 'drizzle-orm'
 import { studio } from '~~/db/schema'
 import { seedDemo } from '~~/db/seed/demo'
+import { learnedPart } from '~~/server/services/learned'
+import { listMaterials, materialSheet } from '~~/server/services/materials'
 import { pieceStates } from '~~/server/services/piece-states'
 import { placeStates, roomStates } from '~~/server/services/room-states'
 import { listRags } from '~~/server/services/rags'
@@ -104,6 +106,20 @@ describe.each(moments)('the demo studio, made on %s', (_, at, zone) => {
     expect(of('select count(*) as n from touch_test where reached = 1')).toBeGreaterThanOrEqual(1)
     expect(of('select count(*) as n from touch_test where reached = 0')).toBeGreaterThanOrEqual(1)
     expect(of('select count(*) as n from branch where rejoined_act_id is null')).toBe(1)
+  })
+
+  it('has a mix on hand with a part that the owner sees and a helper does not', () => {
+    const seen = listMaterials(demo.db, demo.studioId, true)
+    const mix = seen.find(each => each.mix)
+    expect(mix).toMatchObject({ name: 'House brown', kind: 'paint', glue: false })
+    const sheet = (seesPrivate: boolean) => materialSheet(demo.db, demo.studioId, mix?.id ?? 0, seesPrivate)
+    expect(sheet(true)).toMatchObject({ hiddenParts: 0, parts: [{ name: 'Heavy-body acrylic paint', private: false }, { name: 'Walnut tint paste', private: true }] })
+    expect(sheet(false)).toMatchObject({ hiddenParts: 1, parts: [{ name: 'Heavy-body acrylic paint' }] })
+    expect(listMaterials(demo.db, demo.studioId, false).map(each => each.name)).toEqual(seen.map(each => each.name).filter(name => name !== 'Walnut tint paste'))
+    expect(JSON.stringify(sheet(false))).not.toContain('Walnut')
+    const learned = learnedPart(demo.db, demo.studioId, mix?.id ?? 0, demo.now)
+    if ('reason' in learned) throw new Error('The demo has no mix.')
+    expect(Date.parse(learned.newestTinAt ?? '')).toBeLessThan(demo.now)
   })
 
   it('stands exactly as its acts make it', () => {

@@ -7,6 +7,7 @@ import { bowls } from '~~/db/seed/demo/stories/bowls'
 import { boxes } from '~~/db/seed/demo/stories/boxes'
 import { covers } from '~~/db/seed/demo/stories/covers'
 import { dresser } from '~~/db/seed/demo/stories/dresser'
+import { houseMix } from '~~/db/seed/demo/stories/house-mix'
 import { lutes } from '~~/db/seed/demo/stories/lutes'
 import { panels } from '~~/db/seed/demo/stories/panels'
 import { skylight } from '~~/db/seed/demo/stories/skylight'
@@ -72,7 +73,7 @@ export function toldInOrder(calendar: Calendar): Told[] {
   const { books, framesAt } = varnishing(calendar, benchAir)
   const told = [
     ...airTold(notes), ...boards(calendar), ...almanac(calendar, books), ...skylight(calendar, framesAt), ...covers(calendar),
-    ...planning(calendar), ...bowls(calendar), ...boxes(calendar), ...lutes(calendar), ...dresser(calendar), ...panels(calendar),
+    ...houseMix(calendar), ...planning(calendar), ...bowls(calendar), ...boxes(calendar), ...lutes(calendar), ...dresser(calendar), ...panels(calendar),
   ]
   return told.sort((a, b) => a.at - b.at)
 }

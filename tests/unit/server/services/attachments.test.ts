@@ -41,6 +41,10 @@ describe('a kept file', () => {
     expect(checkType(Uint8Array.from([0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a]), ['image/png'])).toBe('image/png')
     expect(checkType(heic, ['image/jpeg'])).toMatchObject({ reason: 'malformed', fields: { file: fileRefusals.heic(['image/jpeg']) } })
     expect(checkType(pdf(''), ['image/jpeg'], 'photo')).toMatchObject({ fields: { photo: 'This is a PDF. It must be a JPEG picture.' } })
+    const sheetTypes = ['application/pdf', 'image/jpeg', 'image/png'] as const
+    expect(checkType(heic, sheetTypes)).toMatchObject({ message: expect.stringContaining('Save it as a JPEG or PNG picture first;') })
+    expect(checkType(new TextEncoder().encode('GIF89a'), sheetTypes)).toMatchObject({ message: 'This is a GIF picture. It must be a PDF, or a JPEG or PNG picture.' })
+    expect(checkType(pdf(''), ['image/jpeg', 'image/png', 'image/webp'])).toMatchObject({ message: 'This is a PDF. It must be a JPEG, PNG or WebP picture.' })
     expect(checkType(new TextEncoder().encode('<html>sheet.pdf</html>'), ['application/pdf'])).toMatchObject({ message: fileRefusals.unknownType(['application/pdf']) })
     expect(checkType(new Uint8Array(), ['application/pdf'])).toMatchObject({ message: fileRefusals.empty })
   })
