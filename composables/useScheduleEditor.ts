@@ -31,6 +31,8 @@ function makeEditor(start: DraftStart, studioId: number, known: ScheduleMaterial
   const refused = computed(() => problems.value.filter(problem => problem.kind === 'refused'))
   /** The step that is open for changing; one at a time, so that the list stays a list. */
   const open = ref<string | null>(null)
+  /** Fields with a figure typed that cannot be, each with the way to it; the draft has the figure from before. */
+  const wrongFields = reactive(new Map<string, () => void>())
   /** Said aloud after an edit that moves things about. */
   const said = ref('')
   const nameOf = (key: string) => draft.value.steps.find(step => step.key === key)?.name || editorWords.nameless
@@ -65,7 +67,7 @@ function makeEditor(start: DraftStart, studioId: number, known: ScheduleMaterial
     },
   }
 
-  return { ...kept, ...acts, tell, sheets, known, members, reckoned, problems, refused, open, said, nameOf, id: start.id }
+  return { ...kept, ...acts, tell, sheets, known, members, reckoned, problems, refused, open, wrongFields, said, nameOf, id: start.id }
 }
 
 export type ScheduleEditor = ReturnType<typeof makeEditor>

@@ -7,6 +7,7 @@ export const mixRefusals = {
   two: 'A mix has at least two parts.',
   many: 'A mix has at most twelve parts.',
   twice: 'Each material stands in a mix once. Add its parts together.',
+  wantsMaterial: 'Material: choose what this part is.',
   noMaterial: 'Choose a material of this studio for each part.',
   itself: (name: string) => `${name} holds this mix itself. A mix cannot be a part of its own parts.`,
   films: 'Parts: finishes and glues are not mixed with one another here. Choose parts that all lie open, or all lie in a joint.',

@@ -29,3 +29,6 @@ export const draftFields = {
   steps: 'A schedule has at most 80 steps.',
   links: 'A schedule has at most 300 waits.',
 } as const
+
+/** "Times a day: a whole number from 1 to 24." */
+export const wholeFromTo = (field: string, least: number, most: number) => `${field}: a whole number from ${least} to ${most}.`

@@ -109,6 +109,69 @@ describe('a schedule made by keyboard only', () => {
   })
 })
 
+describe('a figure or a check that cannot be', () => {
+  it('is said beside its field, holds up saving, and takes nothing else with it; the focus is never lost', async () => {
+    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, maker)
+    await visit(page, '/schedules/new')
+    await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Tray')
+    await page.getByRole('textbox', { name: 'What it is for' }).fill('For tea.')
+    for (const material of ['Acrylic gesso', 'Acrylic varnish']) {
+      await key(page, 'Add a step').last().click()
+      await dialog(page).getByRole('searchbox').fill(material)
+      await dialog(page).getByRole('radio', { name: material, exact: true }).check()
+      await dialog(page).getByRole('button', { name: 'Put it in' }).last().click()
+      await dialog(page).waitFor({ state: 'hidden' })
+    }
+    await press(page, steps(page).first())
+    const perDay = page.getByRole('textbox', { name: 'Times a day' })
+    const before = await elapsed(page).innerText()
+    await tabTo(page, perDay)
+    await page.keyboard.press('Control+A')
+    await page.keyboard.type('99')
+    await page.keyboard.press('Tab')
+    await page.getByText('Times a day: a whole number from 1 to 24.').waitFor()
+    expect(await perDay.inputValue()).toBe('99')
+    // Neither the 9 on the way to it counts.
+    expect(await elapsed(page).innerText()).toBe(before)
+    await press(page, key(page, 'Save'))
+    await page.getByRole('alert').filter({ hasText: 'One figure cannot be as it is typed.' }).waitFor()
+    expect(await isFocused(perDay)).toBe(true)
+    expect(await axeProblems(page)).toEqual([])
+    await page.keyboard.press('Control+A')
+    await page.keyboard.type('2')
+    await expect.poll(() => elapsed(page).innerText()).not.toBe(before)
+    expect(await page.getByText('a whole number from').count()).toBe(0)
+
+    // Two checks at one time: the first stays, the second is told why not.
+    await press(page, page.locator('summary', { hasText: 'Add a check' }))
+    await press(page, key(page, 'Add a check'))
+    await page.getByText('after 30 min: look along the light, 3 min').waitFor()
+    await page.getByRole('textbox', { name: 'What is looked at or done' }).fill('Wipe the drips')
+    await press(page, key(page, 'Add a check'))
+    await page.getByText('At that time there is a check already: look along the light.').waitFor()
+    await page.getByText('after 30 min: look along the light, 3 min').waitFor()
+    await page.getByRole('textbox', { name: 'What is looked at or done' }).fill('')
+    await page.getByRole('textbox', { name: 'Minutes it takes' }).fill('0')
+    await press(page, key(page, 'Add a check'))
+    await page.getByText('Say what is looked at or done.').waitFor()
+    await page.getByText('Minutes it takes: a whole number from 1 to 480.').waitFor()
+
+    // What is taken out takes its key with it; the focus goes on to what stands next.
+    await press(page, key(page, 'Take out the check Look along the light'))
+    await expect.poll(() => isFocused(page.locator('summary', { hasText: 'Add a check' }))).toBe(true)
+    await press(page, key(page, 'Fold up'))
+    await expect.poll(() => isFocused(steps(page).first())).toBe(true)
+    await page.keyboard.press('Enter')
+    await press(page, key(page, 'Take out: Acrylic gesso'))
+    await expect.poll(() => steps(page).count()).toBe(1)
+    await expect.poll(() => isFocused(steps(page).first())).toBe(true)
+    await press(page, key(page, 'Take out the face Back'))
+    await expect.poll(() => isFocused(key(page, 'Add a face'))).toBe(true)
+    expect(problems).toEqual([])
+    await page.context().close()
+  })
+})
+
 describe('a schedule made by touch on a phone', () => {
   it('takes three taps for a coat more, refuses what cannot be with the step named, and starts a batch', async () => {
     const { page, problems } = await openPage(browser, server.origin, { hasTouch: true, isMobile: true }, maker)
