@@ -67,8 +67,10 @@ export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling
     problem.value = !what ? putOnWords.wantsMaterial : on.meant.value.pieces.length === 0 ? putOnWords.wantsPieces : when.value === null ? controlWords.timeWanted : null
     if (problem.value !== null || !what || when.value === null || busy.value) return
     const doneAt = answeredAt(when.value, studio.now.value)
+    const told = chosen.value
     for (const part of asSteps ? parts.value : [{ step: null, pieces: on.meant.value.pieces }]) await tellPart(part, what, doneAt)
-    chosen.value = []
+    // A piece chosen meanwhile is meant for what is told next.
+    chosen.value = chosen.value.filter(id => !told.includes(id))
     on.wholeAgain()
     when.value = { kind: 'ago', minutes: 0 }
     size.value = 'normal'
