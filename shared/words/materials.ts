@@ -66,7 +66,7 @@ export const driverText = (driver: Driver) => drivers[driver]
 
 const names: Record<FigureName, string> = {
   'reference temperature': 'The sheet’s temperature', 'reference humidity': 'The sheet’s humidity', 'minimum temperature': 'Not below', 'maximum temperature': 'Not above', 'humidity ceiling': 'Not damper than', 'dry-air floor': 'Hardly cures in air drier than',
-  'open time': 'Open time', 'closed assembly': 'Closed assembly', 'working time': 'Working time', 'pot life': 'Pot life', 'wet film': 'Wet film', 'spread rate': 'One litre covers', 'VOC': 'VOC', 'thickness exponent': 'A thicker film takes longer by the power of',
+  'open time': 'Open time', 'closed assembly': 'Closed assembly', 'working time': 'Working time', 'pot life': 'Pot life', 'wet film': 'Wet film', 'spread rate': 'Covers', 'VOC': 'VOC', 'thickness exponent': 'A thicker film takes longer by the power of',
 }
 export const figureName = (name: FigureName) => names[name]
 
@@ -110,7 +110,7 @@ function oneFigure(value: number, unit: string, units: Units): string {
     case 'min': return sheetTime(value)
     case 'm2/L': return units === 'us' ? `${figure(value * 40.746)} sq ft per gallon` : `${figure(value)} m² per litre`
     case 'µm': return units === 'us' ? `${figure(value / 25.4)} mil` : `${figure(value)} µm`
-    case 'g/L': return `${figure(value)} g per litre`
+    case 'g/L': return units === 'us' ? `${figure(value / 119.826)} lb per gallon` : `${figure(value)} g per litre`
     case 'm3/h': return airflowText(value, units)
     default: return figure(value)
   }

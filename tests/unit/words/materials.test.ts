@@ -21,6 +21,9 @@ describe('the words of a material sheet', () => {
     expect([timeRange({ low: 2880, typical: 4320, high: 5760 }), timeRange({ low: 30, typical: 60, high: 120 }), timeRange({ low: 61, typical: 70, high: 80 })]).toEqual(['3 days, between 2 and 4 days', '1 h, between 30 min and 2 h', '1 h 10 min, between 1 h 1 min and 1 h 20 min'])
     // 25.4 µm to the mil.
     expect(figureText({ low: null, typical: 76.2, high: null, unit: 'µm' }, 'us')).toBe('3 mil')
+    // 453.59237 g to the pound, 3.785411784 L to the US gallon.
+    expect(figureText({ low: null, typical: 2.9 * 453.59237 / 3.785411784, high: null, unit: 'g/L' }, 'us')).toBe('2.9 lb per gallon')
+    expect(figureText({ low: null, typical: 347.5, high: null, unit: 'g/L' }, 'metric')).toBe('348 g per litre')
   })
   it('say where a figure is from once', () => {
     expect(sourceText({ source: 'planning value', key: 'planning value' })).toBe('a planning value of ours')
