@@ -170,6 +170,18 @@ describe('a figure or a check that cannot be', () => {
     expect(problems).toEqual([])
     await page.context().close()
   })
+
+  it('is said first where nothing else was changed', async () => {
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    const list = (await maker.get<{ id: number, libraryKey: string }[]>('/api/schedules')).body
+    await visit(page, `/schedules/${list[0]?.id}/edit`)
+    await steps(page).first().click()
+    await page.getByRole('textbox', { name: 'Set up, once' }).fill('half an hour')
+    await key(page, /^Save/).click()
+    await page.getByRole('alert').filter({ hasText: 'One figure cannot be as it is typed.' }).waitFor()
+    await page.getByText('Set up, once: a whole number from 0 to 1440.').waitFor()
+    await page.context().close()
+  })
 })
 
 describe('a schedule made by touch on a phone', () => {
