@@ -57,7 +57,7 @@ export const systemRules: readonly SystemRule[] = [
   },
   {
     name: 'varnish over an oil painting', under: ['artists-oil'], over: varnishes, minMin: 180 * day, recommendedMin: 270 * day, bestMin: 365 * day,
-    text: 'Varnish over an oil painting: half a year at least, a year where it is thick.', ...sheet('artists\' oil paint'),
+    text: 'Varnish over an oil painting: half a year at least, a year where it is thick.', ...sheet('artists’ oil paint'),
   },
   {
     name: 'wax over paint', under: paints, over: ['wax'], minMin: day, recommendedMin: 3 * day, bestMin: null,

@@ -16,7 +16,9 @@ import { asSentence, limitText, predictionReason } from '#shared/words/verdict'
 export const handsWords = {
   title: 'Hands',
   more: 'More',
-  moreOf: (title: string) => `More about ${titled(title)}`,
+  moreOf: (title: string, names: string) => `More about ${titled(title)}, ${names}`,
+  /** A key as a reader hears it: the same word stands on the keys of every job. */
+  keyOf: (key: string, names: string) => `${key}, ${names}`,
   stopped: 'Stopped, not done',
   run: 'There is a run',
   runHint: 'It goes its own way: filled, levelled, then back to the others.',

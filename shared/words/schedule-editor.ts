@@ -164,6 +164,7 @@ export const partFields = {
   faces: 'Faces',
   faceName: (no: number) => `Face ${no}`,
   addFace: 'Add a face',
+  addFaceTo: (part: string) => `Add a face to ${part}`,
   newFace: 'New face',
   removeFace: (name: string) => `Take out the face ${name}`,
   addPart: 'Split off a part',

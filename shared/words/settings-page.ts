@@ -62,6 +62,7 @@ export const placeName = (kind: PlaceKind) => placeNames[kind]
 export const roomForm = {
   addRoom: 'Add a room',
   addPlace: 'Add a place',
+  addPlaceIn: (room: string) => `Add a place in ${room}`,
   changeRoom: (name: string) => `Change ${name}`,
   printTags: 'Print its tags',
   printTagsOf: (room: string) => `Print the tags of ${room}`,

@@ -259,6 +259,19 @@ describe('the hands screen', () => {
     expect(await page.getByRole('button', { name: 'Coat is on' }).count()).toBe(0)
   })
 
+  it('names the pieces on every key of a job that is laid open, for the same words stand on the keys of the next', async () => {
+    await startBatch('Hamper', 2)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    const job = jobOf(page, 'First paint on the lid top', 'Hampers 1 and 2')
+    // The answers to what is to be minded are named by the group that says the sentence.
+    const keys = await job.locator('button:not([role="group"] *)').all()
+    expect(keys.length).toBeGreaterThan(2)
+    for (const key of keys) expect(await key.getAttribute('aria-label') ?? await key.textContent()).toContain('Hampers 1 and 2')
+    await job.getByRole('group', { name: /^When, Hampers 1 and 2/ }).waitFor()
+    expect(await job.getByRole('button', { name: 'Coat is on' }).getAttribute('aria-label')).toMatch(/^Coat is on, /)
+  })
+
   it.each(['light', 'dark'] as const)('has nothing that axe objects to in the %s scheme', async (colorScheme) => {
     await startBatch('Trunk', 3)
     const { page } = await openPage(browser, server.origin, { colorScheme }, maker)

@@ -127,7 +127,7 @@ describe('rooms and places', () => {
   it('are added by keyboard, and a place that pieces stand in stays with the reason', async () => {
     const { page } = await openPage(browser, server.origin, { viewport: { width: 834, height: 1112 } }, owner)
     await visit(page, '/settings/rooms')
-    await page.getByRole('region', { name: 'Front bench' }).getByRole('button', { name: 'Add a place' }).focus()
+    await page.getByRole('region', { name: 'Front bench' }).getByRole('button', { name: 'Add a place in Front bench' }).focus()
     await page.keyboard.press('Enter')
     const dialog = page.getByRole('dialog')
     await dialog.getByLabel('Name').fill('Rail')

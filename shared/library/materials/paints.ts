@@ -101,14 +101,14 @@ export const paintMaterials: readonly LibraryMaterial[] = [
     cautions: ['aerosol', 'forbidden middle', 'mixed residue', 'sanding dust'],
   }),
   libraryMaterial({
-    key: 'artists-oil', name: 'Artists\' oil paint', kind: 'paint', solvent: 'turpentine', dryingOil: true,
-    reference: [20, 0.5, sheet('artists\' oil paint')], minTempC: [10, practice], maxRh: [0.8, planning],
+    key: 'artists-oil', name: 'Artists’ oil paint', kind: 'paint', solvent: 'turpentine', dryingOil: true,
+    reference: [20, 0.5, sheet('artists’ oil paint')], minTempC: [10, practice], maxRh: [0.8, planning],
     milestones: [
-      rung('set-to-touch', 'oxidation', days(2, 5, 12), sheet('artists\' oil paint')),
+      rung('set-to-touch', 'oxidation', days(2, 5, 12), sheet('artists’ oil paint')),
       rung('ready-to-recoat', 'oxidation', days(2, 5, 12), practice, 'Touch dry all over. Fat over lean.'),
       rung('tack-free', 'oxidation', days(3, 6, 13), planning),
       rung('dry-to-handle', 'oxidation', days(5, 8, 14), practice),
-      rung('cured', 'oxidation', days(180, 270, 365), sheet('artists\' oil paint'), 'A soft cloth with white spirit takes off no colour at an edge.'),
+      rung('cured', 'oxidation', days(180, 270, 365), sheet('artists’ oil paint'), 'A soft cloth with white spirit takes off no colour at an edge.'),
     ],
     figures: [figure('wet film', [50, 150, 500], practice), figure('spread rate', [2, 6.7, 20], planning), figure('VOC', [0, 50, 300], memory)],
     cautions: ['skin hides wet', 'cover slow oil'],

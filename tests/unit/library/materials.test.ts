@@ -13,6 +13,10 @@ describe('the materials of the library', () => {
     expect(libraryMaterials.length).toBeGreaterThanOrEqual(45)
   })
 
+  it('writes apostrophes as the rest of the product does', () => {
+    expect(JSON.stringify(libraryMaterials)).not.toContain('\'')
+  })
+
   describe.each(libraryMaterials.map(m => [m.key, m] as const))('%s', (key, material) => {
     it('has a key in small letters and a reference climate indoors', () => {
       expect(key).toMatch(/^[a-z]+(-[a-z]+)*$/)
