@@ -25,6 +25,9 @@ export function useJob(job: ComputedRef<Job>) {
 
   const title = computed(() => jobTitle(job.value))
   const names = computed(() => jobNames(job.value))
+  const meant = computed(() => job.value.pieces.filter(each => !left.value.includes(each.read.piece.id)))
+  /** What a key that tells is about: the pieces that are meant, all of them while none is. */
+  const meantNames = computed(() => (meant.value.length > 0 ? jobNames({ pieces: meant.value }) : names.value))
   const wanted = computed(() => job.value.tests ?? (job.value.kind === 'release' ? 'out-of-clamps' as const : 'dry-to-handle' as const))
   const films = computed(() => filmsOf(job.value.pieces).filter(film => job.value.kind !== 'release' || film.hold !== null))
   const film = computed(() => worstFilm(films.value, wanted.value))
@@ -44,16 +47,15 @@ export function useJob(job: ComputedRef<Job>) {
 
   /** Tells a choice about the pieces that are meant. True once it was told, kept or refused; the sheet says which. */
   async function choose(act: ActChoice, detail: ActDetail = {}): Promise<boolean> {
-    const meant = job.value.pieces.filter(each => !left.value.includes(each.read.piece.id))
-    problem.value = meant.length === 0 ? handsWords.noneChosen : when.value === null ? controlWords.timeWanted : null
+    problem.value = meant.value.length === 0 ? handsWords.noneChosen : when.value === null ? controlWords.timeWanted : null
     if (problem.value !== null || when.value === null || busy.value) return false
     const goes = placeId.value !== null && (act.kind === 'glue-up on' || act.kind === 'it is out') ? { placeId: placeId.value } : {}
-    const partIds = act.perPart ? [...new Set(meant.flatMap(each => each.turn.turn.partIds))] : undefined
-    await say({ kind: act.kind, body: { ...act.body, ...goes }, pieces: meant.map(each => each.read.piece), doneAt: answeredAt(when.value, studio.now.value), partIds, step: job.value.turn.step.name, detail })
+    const partIds = act.perPart ? [...new Set(meant.value.flatMap(each => each.turn.turn.partIds))] : undefined
+    await say({ kind: act.kind, body: { ...act.body, ...goes }, pieces: meant.value.map(each => each.read.piece), doneAt: answeredAt(when.value, studio.now.value), partIds, step: job.value.turn.step.name, detail })
     left.value = []
     when.value = { kind: 'ago', minutes: 0 }
     return true
   }
 
-  return { left, when, placeId, problem, title, names, where, moment, films, film, strip, acts, isLater, choose, busy, studio }
+  return { left, when, placeId, problem, title, names, meantNames, where, moment, films, film, strip, acts, isLater, choose, busy, studio }
 }
