@@ -1,3 +1,6 @@
+/** Between facts set side by side: the dot stays at the end of its line and never begins the next one. */
+export const apart = '\u00a0· '
+
 /** "Ledger 12" as "Ledger" and 12; a name without a number at its end as itself and null. */
 function parseName(name: string): { stem: string, no: number | null } {
   const [, stem, figures] = /^(.*\S)\s+(\d{1,6})$/.exec(name.trim()) ?? []

@@ -2,7 +2,7 @@ import { noticedShiftMs } from '#shared/moved'
 import type { Job, Section } from '#shared/hands'
 import type { StillToday } from '#shared/hands-today'
 import type { Clock } from '#shared/time'
-import { clockTime, roughTime, span } from '#shared/time'
+import { clockTime, localDate, roughTime, span } from '#shared/time'
 import type { FilmState } from '#shared/schemas/piece-state'
 import type { Hold, MilestoneName } from '#shared/terms'
 import type { ReasonCode } from '#shared/drying/types'
@@ -107,7 +107,7 @@ export function jobMoment(job: Job, film: FilmState | null, clock: Clock): strin
   if (job.dueAt !== null) return [asSentence(`due since ${clockTime(job.dueAt, clock)}: is it on`).replace(/\.$/, '?'), ...start ? [start] : []].join(' ')
   if (start) return start
   if (job.may) return asSentence([plannedText(job, clock) ?? 'may begin', ...shutText(job, clock)].join('; '))
-  if (moment && because.code !== 'role') return asSentence([aboutText(moment, clock), ...shutText(job, clock), beginReason(because)].join('; '))
+  if (moment && because.code !== 'role') return asSentence([`${aboutText(moment, clock)}${laterDayText(job, clock)}`, ...shutText(job, clock), beginReason(because)].join('; '))
   return asSentence(beginReason(because))
 }
 
@@ -125,6 +125,12 @@ function startOf(moment: StartBy, job: Job, clock: Clock): string {
 function plannedText({ first, pieces }: Job, clock: Clock): string | null {
   if (first === null || first.at <= clock.now) return null
   return `may begin; planned for ${roughTime(first.at, clock, 'down')}${first.some < pieces.length ? `, ${first.some} of ${pieces.length} then` : ''}`
+}
+
+/** " today, planned for Fri 8:30": under the next days a bare clock time would be read as tomorrow's. */
+function laterDayText({ section, moment, first }: Job, clock: Clock): string {
+  if (section !== 'days' || moment?.kind !== 'may begin' || moment.open || localDate(moment.at, clock.zone) !== localDate(clock.now, clock.zone)) return ''
+  return ` today${first === null || first.at <= clock.now ? '' : `, planned for ${roughTime(first.at, clock, 'down')}`}`
 }
 
 /** "the window of 2 of 6 shuts at 15:05": the first that shuts, where one presses and no last moment to start says it already. */

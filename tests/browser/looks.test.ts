@@ -155,6 +155,17 @@ describe('on a phone', () => {
     expect(over).toEqual([true, true, true, true])
     await page.context().close()
   })
+  it.each([390, 1280])('nothing is wider than the page or its key in letters twice as large, at %i px', async (width) => {
+    for (const path of ['/put-on', '/air', '/board', '/week']) {
+      const page = await at(path, { viewport: { width, height: 844 } })
+      await page.locator('main').getByRole('heading').first().waitFor()
+      await page.evaluate(() => { document.documentElement.style.fontSize = '200%' })
+      expect(await page.evaluate(() => document.documentElement.scrollWidth - innerWidth), path).toBeLessThanOrEqual(0)
+      const cut = await page.locator('nav li > *, label:has(input[aria-label$="min ago"])').filter({ visible: true }).evaluateAll(keys => keys.filter(key => key.scrollWidth > key.clientWidth).map(key => key.textContent))
+      expect(cut, path).toEqual([])
+      await page.context().close()
+    }
+  })
   it('an address that leads nowhere says so', async () => {
     const { page } = await openPage(browser, server.origin, { viewport: phone }, owner)
     await page.goto(`${server.origin}/nowhere-at-all`)

@@ -51,6 +51,25 @@ afterAll(async () => {
 })
 
 describe('a piece', () => {
+  it('keeps the words over its drying strips apart, also in letters half as large again', async () => {
+    const id = await boxes(5)
+    const { page } = await openPage(browser, server.origin, {}, owner)
+    await visit(page, `/pieces/${id}`)
+    const words = page.locator('main svg .strip-words')
+    await words.first().waitFor()
+    const high = () => words.first().evaluate(word => word.getBoundingClientRect().height)
+    const usual = await high()
+    await page.evaluate(() => { document.documentElement.style.fontSize = '150%' })
+    // A window of another width is drawn anew.
+    await page.setViewportSize({ width: 1270, height: 800 })
+    await expect.poll(async () => await high() / usual).toBeGreaterThan(1.4)
+    const over = () => words.evaluateAll((all) => {
+      const boxes = all.map(word => ({ says: word.textContent, of: word.closest('[role="img"]'), box: word.getBoundingClientRect() }))
+      return boxes.flatMap((a, index) => boxes.slice(index + 1).filter(b => a.of === b.of && a.box.left < b.box.right && b.box.left < a.box.right && a.box.top + 3 < b.box.bottom && b.box.top + 3 < a.box.bottom).map(b => `${a.says} / ${b.says}`))
+    })
+    await expect.poll(over).toEqual([])
+  })
+
   it('moves everything after a late tap that is put right, and keeps both times in its history', async () => {
     const id = await boxes(5)
     const before = await filmOf(id)

@@ -138,6 +138,11 @@ describe('the list of the hands', () => {
     expect(job && [job.may, job.section, jobMoment(job, null, clock)]).toEqual([true, 'days', 'May begin; planned for Wed morning.'])
   })
 
+  it('says under the next days that a time of this day is today’s, and for when it is planned', () => {
+    const [job] = jobs([piece(1, [turn(1, now + hour, { plan: planAt(now + 23 * hour) })])])
+    expect(job && [job.section, jobMoment(job, null, clock)]).toEqual(['days', 'From 11:30 today, planned for Wed 9:00; waits until “First varnish” is ready to recoat.'])
+  })
+
   it('names what is wet beside dusty work', () => {
     const pieces = read([piece(1, [turn(1, null, { dust: 'some' }, { kind: 'light sanding' })]), piece(2, [], [film(now + 2 * hour)]), piece(3, [], [film(now - 2 * hour)])])
     const [job] = handsJobs(pieces, clock, now)
