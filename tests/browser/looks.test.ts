@@ -166,6 +166,17 @@ describe('on a phone', () => {
       await page.context().close()
     }
   })
+  it.each(['light', 'dark'] as const)('what is chosen stands out in the reader’s own colours in the %s scheme', async (colorScheme) => {
+    const page = await at('/air', { viewport: { width: 1280, height: 844 }, forcedColors: 'active', colorScheme })
+    const ground = (name: string) => page.locator(`label:has(input[aria-label="${name}"])`).evaluate(key => getComputedStyle(key).backgroundColor)
+    await page.getByRole('radio', { name: '60 min ago' }).waitFor()
+    expect(await ground('now')).not.toBe(await ground('60 min ago'))
+    const lines = await page.locator('header nav a').evaluateAll(ways => ways.map(way => ({ current: way.hasAttribute('aria-current'), line: getComputedStyle(way).borderBottomColor })))
+    const own = lines.find(way => way.current)?.line
+    expect(own).toBeDefined()
+    expect(lines.filter(way => !way.current && way.line === own)).toEqual([])
+    await page.context().close()
+  })
   it('an address that leads nowhere says so', async () => {
     const { page } = await openPage(browser, server.origin, { viewport: phone }, owner)
     await page.goto(`${server.origin}/nowhere-at-all`)
