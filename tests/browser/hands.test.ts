@@ -184,6 +184,29 @@ describe('the hands screen', () => {
     await told(page).getByText(/likely .+, give it till /i).waitFor()
   })
 
+  it('speaks of what a tap did and not of its way there, and lets the keyboard go on from it', async () => {
+    await startBatch('Salver', 1)
+    const { page } = await openPage(browser, server.origin, {}, maker)
+    await visit(page, '/hands')
+    await page.route('**/api/acts', async (route) => {
+      await page.waitForTimeout(500)
+      await route.continue()
+    })
+    await page.evaluate(() => {
+      new MutationObserver(() => { if (document.querySelector('main')?.textContent?.includes('not told yet.')) document.body.dataset.waited = 'yes' }).observe(document.body, { subtree: true, childList: true })
+    })
+    await jobOf(page, 'First paint on the lid top', 'Salver 1: lid').getByRole('button', { name: 'Coat is on' }).press('Enter')
+    await told(page).getByText(/^Coat on: first paint on the lid top/).waitFor()
+    const focused = () => page.evaluate(() => document.activeElement?.getAttribute('aria-label') ?? document.activeElement?.textContent?.trim())
+    await expect.poll(focused).toBe('Told')
+    expect(await page.evaluate(() => document.body.dataset.waited)).toBeUndefined()
+    await page.keyboard.press('Tab')
+    expect(await focused()).toBe('Undo')
+    await page.keyboard.press('Enter')
+    await told(page).getByText(/^Taken back: coat on/).waitFor()
+    await expect.poll(focused).toBe('Told')
+  })
+
   it('keeps a tap that does not get through, marks it, and tells it later', async () => {
     await startBatch('Trough', 1)
     const { page } = await openPage(browser, server.origin, {}, maker)

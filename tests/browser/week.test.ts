@@ -42,6 +42,16 @@ afterAll(async () => {
 })
 
 describe('the plan on Week', () => {
+  it('says the day of a peg that is not of today, which the drawing shows', async () => {
+    const { page } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
+    await visit(page, '/week')
+    const another = page.getByRole('button', { name: /^(Mon|Tue|Wed|Thu|Fri|Sat|Sun) \d+:\d\d to .*Bowl/ })
+    await page.getByRole('button', { name: /to .*Bowls? 1/ }).first().waitFor()
+    for (let days = 0; days < 6 && await another.count() === 0; days++) await page.getByRole('button', { name: 'Later days' }).click()
+    expect(await another.count()).toBeGreaterThan(0)
+    await page.context().close()
+  })
+
   it('is pinned by keyboard, let go again, and pinned by a drag', async () => {
     const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
     await visit(page, '/week')
