@@ -156,8 +156,9 @@ describe('on a phone', () => {
     await page.context().close()
   })
   it.each([390, 1280])('nothing is wider than the page or its key in letters twice as large, at %i px', async (width) => {
-    for (const path of ['/put-on', '/air', '/board', '/week']) {
-      const page = await at(path, { viewport: { width, height: 844 } })
+    for (const path of ['/put-on', '/air', '/board', '/week', '/sign-in']) {
+      const { page } = await openPage(browser, server.origin, { viewport: { width, height: 844 } }, path === '/sign-in' ? undefined : owner)
+      await visit(page, path)
       await page.locator('main').getByRole('heading').first().waitFor()
       await page.evaluate(() => { document.documentElement.style.fontSize = '200%' })
       expect(await page.evaluate(() => document.documentElement.scrollWidth - innerWidth), path).toBeLessThanOrEqual(0)
