@@ -16,7 +16,7 @@ const small = new Set(['a', 'an', 'the', 'of', 'and', 'in', 'on', 'with', 'to', 
  */
 export function takeName(tokens: Token[], things: readonly Named[]): Found | null {
   const scored = things.map((thing) => {
-    const own = wordsOf(thing.name).filter(word => !small.has(word))
+    const own = [...new Set(wordsOf(thing.name).filter(word => !small.has(word)))]
     return { thing, own, hits: own.filter(word => tokens.some(token => token.word === word)).length }
   }).filter(each => each.hits > 0)
   const most = Math.max(0, ...scored.map(each => each.hits))

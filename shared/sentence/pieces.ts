@@ -18,9 +18,12 @@ function kindsOf(pieces: readonly NamedPiece[]): Kind[] {
   }
   for (const piece of pieces) {
     const words = wordsOf(piece.name)
-    const no = /^\d+$/.test(words.at(-1) ?? '') ? Number(words.at(-1)) : null
-    const stem = no === null ? words : words.slice(0, -1)
+    // "Ledger 4, the tall one" is number 4 of the ledgers too.
+    const head = wordsOf(piece.name.split(/[,;:(]/)[0] ?? '')
+    const no = /^\d+$/.test(head.at(-1) ?? '') ? Number(head.at(-1)) : null
+    const stem = no === null ? words : head.slice(0, -1)
     add(stem, piece.id, no)
+    if (no !== null && head.length < words.length) add(words, piece.id, null)
     const batch = wordsOf(piece.batch)
     if (batch.join(' ') !== stem.join(' ')) add(batch, piece.id, no)
   }
@@ -49,43 +52,62 @@ function numbersAt(tokens: readonly Token[], from: number): { numbers: number[],
     const first = whole(next)
     if (first === null) return { numbers, length: at - from }
     const last = ['to', 'through', 'until', 'till'].includes(tokens[next + 1]?.word ?? '') ? whole(next + 2) : null
-    for (let no = first; no <= Math.min(last ?? first, first + 999); no += 1) numbers.push(no)
+    const [low, high] = last === null ? [first, first] : [Math.min(first, last), Math.max(first, last)]
+    for (let no = low; no <= Math.min(high, low + 999); no += 1) numbers.push(no)
     at = last === null ? next + 1 : next + 3
   }
 }
 
 const exceptions = ['but', 'except', 'without', 'not']
+const excepts = (token: Token | undefined) => exceptions.includes(token?.word ?? '')
+
+/** "but 3", "but not 1 and 6", from here on: the numbers, and how many words that took; none where no number follows. */
+function exceptAt(tokens: readonly Token[], from: number): { numbers: number[], length: number } {
+  let at = from
+  while (excepts(tokens[at])) at += 1
+  const but = at === from ? { numbers: [], length: 0 } : numbersAt(tokens, at)
+  return but.numbers.length > 0 ? { numbers: but.numbers, length: at - from + but.length } : { numbers: [], length: 0 }
+}
+
+/** How many words before here leave out what is named here: "but", "but not the"; 0 where none does. */
+function exceptBefore(tokens: readonly Token[], at: number): number {
+  const before = tokens[at - 1]?.word === 'the' ? at - 1 : at
+  let from = before
+  while (excepts(tokens[from - 1])) from -= 1
+  return from === before ? 0 : at - from
+}
+
+/** The pieces that a sentence means, and those that it leaves out of whatever else it names. */
+export interface SaidPieces { meant: number[], but: number[] }
 
 /**
  * The pieces a sentence names, and takes those words out of it: "ledgers one to four and the clock case", "all ledgers
  * but 3". A number that no piece has is left in the sentence.
  * @param tokens changed: what was understood is taken out
  */
-export function takePieces(tokens: Token[], pieces: readonly NamedPiece[]): number[] {
+export function takePieces(tokens: Token[], pieces: readonly NamedPiece[]): SaidPieces {
   const kinds = kindsOf(pieces)
   const meant = new Set<number>()
+  const but = new Set<number>()
   for (let at = 0; at < tokens.length; at += 1) {
     const found = kindAt(tokens, at, kinds)
     if (!found) continue
-    const { kind } = found
-    const plain = numbersAt(tokens, at + found.length)
-    let end = at + found.length + plain.length
-    const known = (numbers: readonly number[]) => numbers.filter(no => kind.pieces.some(piece => piece.no === no))
-    const left: Token[] = missed(tokens.slice(at + found.length, end), plain.numbers.filter(no => !known([no]).length))
-    let out: number[] = []
-    if (plain.numbers.length === 0 && exceptions.includes(tokens[end]?.word ?? '')) {
-      const but = numbersAt(tokens, tokens[end + 1]?.word === 'number' ? end + 2 : end + 1)
-      out = but.numbers
-      left.push(...missed(tokens.slice(end + 1, end + 1 + but.length), but.numbers.filter(no => !known([no]).length)))
-      if (but.numbers.length > 0) end += 1 + but.length
-    }
-    const chosen = plain.numbers.length > 0 ? known(plain.numbers) : null
-    for (const piece of kind.pieces) if (chosen ? chosen.includes(piece.no ?? -1) : !out.includes(piece.no ?? -1)) meant.add(piece.id)
-    tokens.splice(at, end - at, ...left)
-    at += left.length - 1
+    const own = found.kind.pieces
+    const none = (no: number) => !own.some(piece => piece.no === no)
+    const first = at + found.length
+    const plain = numbersAt(tokens, first)
+    const middle = first + plain.length
+    const out = exceptAt(tokens, middle)
+    const end = middle + out.length
+    const left = [...missed(tokens.slice(first, middle), plain.numbers.filter(none)), ...missed(tokens.slice(middle, end), out.numbers.filter(none))]
+    const before = exceptBefore(tokens, at)
+    for (const { id, no } of own) if (no === null ? plain.numbers.length === 0 : (plain.numbers.length === 0 || plain.numbers.includes(no)) && !out.numbers.includes(no)) (before > 0 ? but : meant).add(id)
+    tokens.splice(at - before, end - at + before, ...left)
+    at += left.length - 1 - before
   }
   drop(tokens, ['piece'])
-  return pieces.filter(piece => meant.has(piece.id)).map(piece => piece.id)
+  const listed = (ids: ReadonlySet<number>) => pieces.filter(piece => ids.has(piece.id)).map(piece => piece.id)
+  return { meant: listed(meant).filter(id => !but.has(id)), but: listed(but) }
 }
 
 /** The words of numbers that no piece has; of a row that runs too far, its end. */

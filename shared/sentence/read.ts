@@ -81,9 +81,9 @@ function readAir(tokens: Token[], { rooms }: Vocabulary, units: Units, when: Sai
 }
 
 /** Everything that stands in a place that is named, where no piece is: "varnish on the long shelf". */
-function takeStanding(tokens: Token[], { places }: Vocabulary): number[] {
+function takeStanding(tokens: Token[], { places }: Vocabulary, but: readonly number[]): number[] {
   const place = takeName(tokens, places)
-  return place ? [...places.find(each => each.id === place.id)?.pieceIds ?? []] : []
+  return (places.find(each => each.id === place?.id)?.pieceIds ?? []).filter(id => !but.includes(id))
 }
 
 /**
@@ -98,7 +98,7 @@ export function readSentence(text: string, vocabulary: Vocabulary, clock: Clock,
   const when = takeWhen(tokens, clock)
   const said = (words: readonly string[]): boolean => tokens.some(token => words.includes(token.word))
   if (said(airWords)) return readAir(tokens, vocabulary, units, when)
-  const pieceIds = takePieces(tokens, vocabulary.pieces)
+  const { meant: pieceIds, but } = takePieces(tokens, vocabulary.pieces)
   if (said(carried)) {
     const place = takeName(tokens, vocabulary.places)
     return { kind: 'moved', place, pieceIds, ...when, unknown: leftOver(tokens, filler) }
@@ -107,9 +107,9 @@ export function readSentence(text: string, vocabulary: Vocabulary, clock: Clock,
   const ofRoom = pieceIds.length === 0 && takeName([...tokens], vocabulary.places) === null && takeName([...tokens], vocabulary.rooms) !== null
   if (ofRoom && said(humidityWords)) return readAir(tokens, vocabulary, units, when)
   const test = takeTest(tokens)
-  if (test) return { kind: 'touch test', ...test, pieceIds: pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary), ...when, unknown: leftOver(tokens, filler) }
+  if (test) return { kind: 'touch test', ...test, pieceIds: pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary, but), ...when, unknown: leftOver(tokens, filler) }
   const material = takeName(tokens, vocabulary.materials)
-  const standing = pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary)
+  const standing = pieceIds.length > 0 ? pieceIds : takeStanding(tokens, vocabulary, but)
   if (!material && standing.length === 0) return null
   return { kind: 'put on', material, pieceIds: standing, ...when, unknown: leftOver(tokens, filler) }
 }

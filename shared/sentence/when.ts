@@ -18,10 +18,28 @@ function spanBefore(tokens: readonly Token[], end: number): { minutes: number, f
   return unit !== undefined && number !== null ? { minutes: number * unit, from: end - 2 } : null
 }
 
+/** Minutes that are said by a word of their own before "past" or "to". */
+const partsOfHour: Record<string, number> = { half: 30, quarter: 15 }
+
+/** "half past four", "a quarter to 5", "twenty past two": of an hour's minutes said as a number only past it, for "1 to 4" is a row of pieces. */
+function partedAt(tokens: readonly Token[], at: number): { minutes: number, length: number } | null {
+  const article = tokens[at]?.word === 'a' ? 1 : 0
+  const [said, turn, of] = tokens.slice(at + article)
+  const minutes = partsOfHour[said?.word ?? ''] ?? (turn?.word === 'past' ? said?.number ?? null : null)
+  const hour = of?.number ?? null
+  if (minutes === null || minutes >= 60 || hour === null || !Number.isInteger(hour) || hour > 23 || !(turn?.word === 'past' || (turn?.word === 'to' && said?.word === 'quarter'))) return null
+  const half = tokens[at + article + 3]?.word ?? ''
+  const late = half === 'pm' && hour < 12 ? 12 : 0
+  const all = (hour + late) * 60 + (turn.word === 'past' ? minutes : -minutes)
+  return { minutes: (all + 24 * 60) % (24 * 60), length: article + (['pm', 'am'].includes(half) ? 4 : 3) }
+}
+
 /** "14:20" or "14 20" is not a time by itself; "at 14:20" and "at 5" are. */
 function clockAt(tokens: readonly Token[], at: number): { minutes: number, length: number } | null {
   const [, hours, minutes] = /^(\d{1,2}):(\d\d)$/.exec(tokens[at]?.said ?? '') ?? []
   if (hours !== undefined && Number(hours) < 24 && Number(minutes) < 60) return { minutes: Number(hours) * 60 + Number(minutes), length: 1 }
+  const parted = partedAt(tokens, at)
+  if (parted) return parted
   const hour = tokens[at]?.number ?? null
   if (hour === null || !Number.isInteger(hour) || hour > 23 || tokens[at - 1]?.word !== 'at') return null
   const late = tokens[at + 1]?.word === 'pm' && hour < 12

@@ -13,7 +13,7 @@ const vocabulary: Vocabulary = {
   pieces: [
     ...[1, 2, 3, 4, 5, 6].map(no => ({ id: no, name: `Ledger ${no}`, batch: 'Autumn ledgers' })),
     { id: 11, name: 'Tide box 1', batch: 'Tide boxes' }, { id: 12, name: 'Tide box 2', batch: 'Tide boxes' },
-    { id: 13, name: 'Lantern box 1', batch: 'Lantern boxes' }, { id: 14, name: 'Clock case', batch: 'Clock case' },
+    { id: 13, name: 'Lantern box 1', batch: 'Lantern boxes' }, { id: 14, name: 'Clock case', batch: 'Clock case' }, { id: 15, name: 'Lantern box 2, the tall one', batch: 'Lantern boxes' },
   ],
   places: [{ id: 21, name: 'Long shelf', pieceIds: [1, 2, 14] }, { id: 22, name: 'Yard rail', pieceIds: [] }],
   rooms: [{ id: 31, name: 'Bench room' }, { id: 32, name: 'Shed' }],
@@ -31,12 +31,23 @@ describe('something put on', () => {
   it('keeps what else a short name may have meant, the last used first', () => {
     expect(putOn('gesso on ledger 2').material).toEqual({ id: 1, name: 'White acrylic gesso', others: [{ id: 2, name: 'Black acrylic gesso' }] })
   })
+  it('does not take a name for likelier that says one word twice', () => {
+    const materials = [{ id: 5, name: 'Oil varnish, wiping varnish' }, { id: 6, name: 'Spirit varnish' }]
+    expect(readSentence('varnish on ledger 2', { ...vocabulary, materials }, clock, 'metric')).toMatchObject({ material: { id: 6, others: [{ id: 5 }] } })
+  })
   it.each<[string, number[]]>([
     ['varnish on ledgers 1, 2 and 5', [1, 2, 5]],
     ['varnish on ledgers 2-4', [2, 3, 4]],
     ['varnish on ledgers one through three and the clock case', [1, 2, 3, 14]],
     ['varnish on all ledgers but 3', [1, 2, 4, 5, 6]],
     ['varnish on the ledgers except 1 and 6', [2, 3, 4, 5]],
+    ['varnish on ledgers 1 to 5 but not 3', [1, 2, 4, 5]],
+    ['varnish on ledgers 4 to 2', [2, 3, 4]],
+    ['varnish on all ledgers but ledger 3', [1, 2, 4, 5, 6]],
+    ['varnish on the long shelf except ledger 2', [1, 14]],
+    ['varnish on all but the clock case', []],
+    ['varnish on lantern boxes 1 to 2', [13, 15]],
+    ['varnish on lantern box 2, the tall one', [15]],
     ['varnish on autumn ledgers', [1, 2, 3, 4, 5, 6]],
     ['varnish on the tide boxes', [11, 12]],
     ['varnish on everything on the long shelf', [1, 2, 14]],
@@ -62,7 +73,7 @@ describe('when', () => {
     expect(when(text)).toMatchObject({ when: { kind: 'ago', minutes }, unknown: [], pieceIds: [1] })
   })
   // London is an hour ahead of UTC in June.
-  it.each<[string, number]>([['at 14:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 2 pm', Date.UTC(2026, 5, 10, 13)], ['at 9 o\'clock', Date.UTC(2026, 5, 10, 8)], ['at 17:40', Date.UTC(2026, 5, 9, 16, 40)], ['yesterday at 9:30', Date.UTC(2026, 5, 9, 8, 30)], ['at 9:30 yesterday', Date.UTC(2026, 5, 9, 8, 30)],
+  it.each<[string, number]>([['at 14:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 2 pm', Date.UTC(2026, 5, 10, 13)], ['at 9 o\'clock', Date.UTC(2026, 5, 10, 8)], ['at half past nine', Date.UTC(2026, 5, 10, 8, 30)], ['at a quarter to 2 pm', Date.UTC(2026, 5, 10, 12, 45)], ['at ten past 14', Date.UTC(2026, 5, 10, 13, 10)], ['at 17:40', Date.UTC(2026, 5, 9, 16, 40)], ['yesterday at 9:30', Date.UTC(2026, 5, 9, 8, 30)], ['at 9:30 yesterday', Date.UTC(2026, 5, 9, 8, 30)],
     ['yesterday evening at 7', Date.UTC(2026, 5, 9, 18)], ['at 11 last night', Date.UTC(2026, 5, 9, 22)], ['last night at 2', Date.UTC(2026, 5, 10, 1)], ['this morning at 8:15', Date.UTC(2026, 5, 10, 7, 15)],
     // The tenth of June 2026 is a Wednesday.
     ['on Monday at 9', Date.UTC(2026, 5, 8, 8)], ['on Monday afternoon at 3', Date.UTC(2026, 5, 8, 14)], ['last Wednesday at 9', Date.UTC(2026, 5, 3, 8)]])('"%s"', (text, at) => {
