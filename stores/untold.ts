@@ -1,6 +1,6 @@
 import { defineStore } from 'pinia'
 import { FetchError } from 'ofetch'
-import type { ActRequest } from '#shared/schemas/act'
+import type { ActAnswer, ActRequest } from '#shared/schemas/act'
 
 /** A person's taps and a bench tablet's lie apart on a device that is both. */
 const shelvesOf = (atBench: boolean) => atBench ? { acts: 'stillwet untold at the bench', refused: 'stillwet refused at the bench' } : { acts: 'stillwet untold', refused: 'stillwet refused' }
@@ -36,6 +36,16 @@ function refusalOf(error: unknown): Extract<Told, { outcome: 'refused' }> | null
   return { outcome: 'refused', message: message ?? error.message, fields: fields ?? {}, current: current ?? null }
 }
 
+/** Lets jobs run one after the other, in the order in which they came. */
+function makeTurns() {
+  let last: Promise<unknown> = Promise.resolve()
+  return <Answer>(job: () => Promise<Answer>): Promise<Answer> => {
+    const mine = last.then(job)
+    last = mine.catch(() => undefined)
+    return mine
+  }
+}
+
 /** Which way taps go: set by the page of a bench tablet, they go its way, under the name of whoever gave a PIN (null: the bench). */
 function makeDoor() {
   const atBench = ref(false)
@@ -44,14 +54,12 @@ function makeDoor() {
   return { atBench, memberId, path }
 }
 
-/** Acts that this device has not been able to tell yet: nothing tapped is ever lost, not to a dead spot nor to a closed page. */
-export const useUntoldStore = defineStore('untold', () => {
+type Door = ReturnType<typeof makeDoor>
+
+/** What this device keeps: acts that are not told yet, and those that were refused late. */
+function makeShelf({ atBench }: Door) {
   const acts = ref<KeptAct[]>([])
   const refused = ref<RefusedAct[]>([])
-  /** What became of acts that were told late: the studio's number of each, by client key. */
-  const arrived = ref<Record<string, number>>({})
-
-  const { atBench, memberId, path } = makeDoor()
 
   function keep() {
     const shelves = shelvesOf(atBench.value)
@@ -71,33 +79,11 @@ export const useUntoldStore = defineStore('untold', () => {
     keep()
   }
 
-  /** Tells one act, keeping it on the device until the studio has answered. */
-  async function tell(tapped: KeptAct): Promise<Told> {
-    const act = atBench.value && tapped.memberId === undefined ? { ...tapped, memberId: memberId.value } : tapped
-    if (!acts.value.some(each => each.clientKey === act.clientKey)) acts.value = [...acts.value, act]
-    keep()
-    try {
-      const { actId } = await callApi<{ actId: number }>(path.value, { method: 'POST', body: act, timeout: answerMs })
-      drop(act.clientKey)
-      return { outcome: 'told', actId }
-    }
-    catch (error) {
-      const refusal = refusalOf(error)
-      if (!refusal) return { outcome: 'later', clientKey: act.clientKey }
-      drop(act.clientKey)
-      return refusal
-    }
-  }
-
-  /** Tells what waits, in the order it was tapped; stops at the first that does not get through. */
-  async function tellAll() {
-    for (const act of [...acts.value]) {
-      const told = await tell(act)
-      if (told.outcome === 'later') return
-      if (told.outcome === 'told') arrived.value = { ...arrived.value, [act.clientKey]: told.actId }
-      else refused.value = [...refused.value, { act, message: told.message }]
-    }
-    keep()
+  /** What waits and was tapped on a piece as it stood before the act that has just been told, follows on from that act. */
+  function followOn(sent: KeptAct, { versions }: ActAnswer) {
+    const seen = new Map(sent.pieces.map(({ id, version }) => [id, version]))
+    const after = new Map(versions.map(({ id, version }) => [id, version]))
+    acts.value = acts.value.map(act => ({ ...act, pieces: act.pieces.map(({ id, version }) => ({ id, version: seen.get(id) === version ? after.get(id) ?? version : version })) }))
   }
 
   function start() {
@@ -106,5 +92,70 @@ export const useUntoldStore = defineStore('untold', () => {
     refused.value = readShelf<RefusedAct>(shelves.refused)
   }
 
-  return { acts, refused, arrived, atBench, memberId, path, tell, tellAll, drop, dismiss, start }
+  return { acts, refused, keep, drop, dismiss, followOn, start }
+}
+
+/** Acts that this device has not been able to tell yet: nothing tapped is ever lost, not to a dead spot nor to a closed page. */
+export const useUntoldStore = defineStore('untold', () => {
+  const door = makeDoor()
+  const { acts, refused, keep, drop, dismiss, followOn, start } = makeShelf(door)
+  /** What became of acts that were told late: the studio's number of each, by client key. */
+  const arrived = ref<Record<string, number>>({})
+  const inTurn = makeTurns()
+  /** Taps whose page waits for the answer. */
+  const awaited = new Set<string>()
+  let notReached = 0
+
+  async function send(act: KeptAct): Promise<Told> {
+    try {
+      const answer = await callApi<ActAnswer>(door.path.value, { method: 'POST', body: act, timeout: answerMs })
+      followOn(act, answer)
+      drop(act.clientKey)
+      return { outcome: 'told', actId: answer.actId }
+    }
+    catch (error) {
+      const refusal = refusalOf(error)
+      if (refusal) drop(act.clientKey)
+      else notReached += 1
+      return refusal ?? { outcome: 'later', clientKey: act.clientKey }
+    }
+  }
+
+  /**
+   * Tells what waits, in the order it was tapped; stops at the first that does not get through.
+   * @param last the key to end at; null to tell all that no page waits for
+   * @returns what came of the last, or null where it was not reached
+   */
+  async function tellUntil(last: string | null): Promise<Told | null> {
+    for (const key of acts.value.map(each => each.clientKey)) {
+      const act = acts.value.find(each => each.clientKey === key)
+      if (!act) continue
+      if (key !== last && awaited.has(key)) return null
+      const told = await send(act)
+      if (key === last) return told
+      if (told.outcome === 'later') return null
+      if (told.outcome === 'told') arrived.value = { ...arrived.value, [key]: told.actId }
+      else refused.value = [...refused.value, { act, message: told.message }]
+      keep()
+    }
+    return null
+  }
+
+  /** Tells one act after those that wait, keeping it on the device until the studio has answered. */
+  async function tell(tapped: KeptAct): Promise<Told> {
+    const act = door.atBench.value && tapped.memberId === undefined ? { ...tapped, memberId: door.memberId.value } : tapped
+    acts.value = [...acts.value, act]
+    keep()
+    awaited.add(act.clientKey)
+    const failures = notReached
+    // Not reached while this one waited for its turn, the studio is not asked again for it now.
+    const told = await inTurn(async () => failures < notReached ? null : tellUntil(act.clientKey))
+    awaited.delete(act.clientKey)
+    return told ?? { outcome: 'later', clientKey: act.clientKey }
+  }
+
+  let telling: Promise<unknown> | null = null
+  const tellAll = () => telling ??= inTurn(() => tellUntil(null)).finally(() => { telling = null })
+
+  return { acts, refused, arrived, atBench: door.atBench, memberId: door.memberId, path: door.path, tell, tellAll, drop, dismiss, start }
 })

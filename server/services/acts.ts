@@ -1,5 +1,5 @@
-import { and, asc, eq, inArray } from 'drizzle-orm'
-import { act, carrier, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
+import { and, asc, eq, inArray, max } from 'drizzle-orm'
+import { act, actSubject, carrier, materialVersion, part, piece, pieceStep, place, stepTarget } from '~~/db/schema'
 import type { Membership } from '~~/server/services/sessions'
 import { change } from '~~/server/utils/change'
 import { pieceStates } from '~~/server/services/piece-states'
@@ -37,7 +37,8 @@ const clockSlack = 2 * minute
 /** Who tells: a member, or the bench tablet with what a bench may say. */
 export type Teller = { member: Membership } | { bench: true }
 
-export interface Recorded { ok: true, actId: number, repeated: boolean }
+/** `versions` of the pieces that nobody has told about since: what its teller tapped after it follows on from there. */
+export interface Recorded { ok: true, actId: number, repeated: boolean, versions: { id: number, version: number }[] }
 
 type PieceRow = typeof piece.$inferSelect
 
@@ -48,7 +49,7 @@ type PieceRow = typeof piece.$inferSelect
  */
 export function recordAct(db: Database, studioId: number, teller: Teller, request: ActRequest, now: number): Recorded | Refusal {
   const before = db.select({ id: act.id }).from(act).where(scoped(act, studioId, eq(act.clientKey, request.clientKey))).get()
-  if (before) return { ok: true, actId: before.id, repeated: true }
+  if (before) return { ok: true, actId: before.id, repeated: true, versions: versionsAfter(db, studioId, before.id) }
   const told = parseActBody(request.kind, request.body)
   if (isRefusal(told)) return told
   return change<Recorded | Refusal>(db, studioId, 'work', (tx): Recorded | Refusal => {
@@ -69,8 +70,16 @@ export function recordAct(db: Database, studioId: number, teller: Teller, reques
     const { memberId } = actingOf(teller)
     noteStart(tx, studioId, memberId, request, body, actId, now)
     afterAct(tx, studioId, { actId, kind: request.kind, body, pieceIds: pieces.map(each => each.id), memberId, doneAt: Date.parse(request.doneAt), now })
-    return { ok: true, actId, repeated: false }
+    return { ok: true, actId, repeated: false, versions: versionsAfter(tx, studioId, actId) }
   })
+}
+
+/** The versions of the act's pieces that it was the last word about. */
+export function versionsAfter(db: Database | Transaction, studioId: number, actId: number): Recorded['versions'] {
+  const own = db.select({ id: part.pieceId }).from(actSubject).innerJoin(part, eq(part.id, actSubject.partId)).where(scoped(actSubject, studioId, eq(actSubject.actId, actId)))
+  return db.select({ id: piece.id, version: piece.version }).from(piece)
+    .innerJoin(part, eq(part.pieceId, piece.id)).innerJoin(actSubject, eq(actSubject.partId, part.id))
+    .where(scoped(piece, studioId, inArray(piece.id, own))).groupBy(piece.id).having(eq(max(actSubject.actId), actId)).all()
 }
 
 /** Checks an act's body against its kind; the refusal names the field. */

@@ -1,6 +1,6 @@
 import { eq, inArray } from 'drizzle-orm'
 import { act, part } from '~~/db/schema'
-import { actingOf, checkTime, parseActBody } from '~~/server/services/acts'
+import { actingOf, checkTime, parseActBody, versionsAfter } from '~~/server/services/acts'
 import type { Recorded, Teller } from '~~/server/services/acts'
 import { moveStart, refuseOutOfOrder, refuseStartCorrection } from '~~/server/services/batch-start'
 import { refuseByCaution } from '~~/server/services/act-cautions'
@@ -30,7 +30,7 @@ type Subject = { partId: number, doneAt: number }
  */
 export function correctAct(db: Database, studioId: number, teller: Teller, actId: number, request: CorrectionRequest, now: number): Recorded | Refusal {
   const told = db.select({ id: act.id }).from(act).where(scoped(act, studioId, eq(act.clientKey, request.clientKey))).get()
-  if (told) return { ok: true, actId: told.id, repeated: true }
+  if (told) return { ok: true, actId: told.id, repeated: true, versions: versionsAfter(db, studioId, told.id) }
   return change<Recorded | Refusal>(db, studioId, 'work', (tx): Recorded | Refusal => {
     const old = tx.select().from(act).where(owned(act, studioId, actId)).get()
     if (!old) return absent()
@@ -54,7 +54,7 @@ export function correctAct(db: Database, studioId: number, teller: Teller, actId
     if (old.kind === 'batch started') moveStart(tx, studioId, rootId, doneAt)
     refold(tx, studioId, pieceIds)
     afterAct(tx, studioId, { actId: rootId, kind: old.kind, body: { ...body }, pieceIds, memberId: actingOf(teller).memberId, doneAt, now })
-    return { ok: true, actId: newId, repeated: false }
+    return { ok: true, actId: newId, repeated: false, versions: versionsAfter(tx, studioId, newId) }
   })
 }
 

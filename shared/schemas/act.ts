@@ -87,3 +87,6 @@ export const correctionRequest = z.object({
   takeBack: z.optional(z.boolean()),
 })
 export type CorrectionRequest = z.infer<typeof correctionRequest>
+
+/** What the studio answers to an act: its number, and the versions of its pieces that nobody has told about since. */
+export interface ActAnswer { actId: number, versions: { id: number, version: number }[] }

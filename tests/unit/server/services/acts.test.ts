@@ -56,6 +56,16 @@ describe('a coat on a row of pieces', () => {
     expect(again).toEqual({ ...first, repeated: true })
   })
 
+  it('answers how its pieces stand after it, so that the next tap of the same hand follows on', () => {
+    const studio = withBatch(2)
+    const versions = () => pieceStates(studio.db, studio.studioId, studio.pieceIds).map(({ id, version }) => ({ id, version }))
+    const first = tell(studio, 'began', studio.pieceIds, { step: 'lid-1' }, now - minute, 'same-hand-1')
+    expect(first).toMatchObject({ ok: true, versions: versions() })
+    // Somebody else was at the second piece since: of that one nothing follows on, also when the first answer was lost.
+    tell(studio, 'seen', studio.pieceIds.slice(1), {}, now, 'other-hand-1', 'helper')
+    expect(tell(studio, 'began', studio.pieceIds, { step: 'lid-1' }, now - minute, 'same-hand-1')).toEqual({ ...first, repeated: true, versions: versions().slice(0, 1) })
+  })
+
   it('by two people at once ends in one winner', () => {
     const studio = withBatch(1)
     const seen = pieceStates(studio.db, studio.studioId, studio.pieceIds).map(({ id, version }) => ({ id, version }))
