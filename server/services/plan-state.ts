@@ -38,7 +38,7 @@ export function planState(db: Database, studioId: number, now: number): PlanStat
 const partsOf = (kept: Readonly<Record<string, number>>): Objective => Object.fromEntries(objectiveParts.map(part => [part, kept[part] ?? 0])) as unknown as Objective
 
 /** The studio's hours day by day, widened to hold what is planned or in hand outside them. */
-function daysOf(facts: PlanFacts, blocks: readonly PlanBlock[], now: number): PlanDay[] {
+function daysOf(facts: PlanFacts, blocks: readonly Pick<PlanBlock, 'fromAt' | 'toAt'>[], now: number): PlanDay[] {
   const zone = studioZone(facts.owner.zone)
   const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
   return Array.from({ length: daysShown }, (_, ahead): PlanDay => {
