@@ -19,6 +19,7 @@ export type MoveCause =
   | { code: 'follows', step: string, startsAt: number, because: MoveCause | null }
   | { code: 'step added', step: string }
   | { code: 'hours', name: string | null }
+  | { code: 'not theirs', name: string }
   | { code: 'hands', name: string | null, step: string, batch: string, added: boolean, because?: MoveCause | null }
   | { code: 'freed', name: string | null, step: string, batch: string, gone?: 'done' | 'dropped' | null }
   | { code: 'done before', step: string }

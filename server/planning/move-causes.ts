@@ -144,14 +144,16 @@ export class MoveCauses {
     return entry.afterRecovery && was !== undefined && this.minutes(was.endsAt) - this.minutes(was.startsAt) < entry.end - entry.start
   }
 
-  /** Whoever the last plan gave it to no longer works then. */
+  /** Whoever the last plan gave it to may no longer do it, or no longer works then. */
   private handAway(turnId: number): MoveCause | null {
     const { given, names } = this.compared
     const was = this.last.get(turnId)
     const hand = was && given.hands.find(each => each.memberId === was.memberId)
     if (!was || !hand || was.startsAt < given.zeroAt) return null
+    const work = this.works.get(activityId(turnId))
+    if (work && !hand.may(work.step.kind)) return { code: 'not theirs', name: names.get(hand.memberId) ?? '' }
     const start = this.minutes(was.startsAt)
-    const end = this.activities.get(activityId(turnId))?.mayRunOver ? start + 1 : this.minutes(was.endsAt)
+    const end = work?.step.mayRunOver ? start + 1 : this.minutes(was.endsAt)
     return hand.open.some(([from, to]) => start >= from && end <= to) ? null : { code: 'hours', name: names.get(hand.memberId) ?? null }
   }
 

@@ -1,6 +1,6 @@
 import { and, eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { batch, closure, member, openHours, plan, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
+import { batch, closure, member, memberStepKind, openHours, plan, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { movedTurns } from '~~/server/services/plan-moves'
 import { copyAgain } from '~~/server/utils/database'
@@ -170,6 +170,24 @@ describe('what moved', () => {
     studio.tell('work done', early, step?.key ?? '', studio.pieceIds)
     expect(await replan(studio.db, studio.studioId, early + minute, atOnce, true)).toMatchObject({ ok: true })
     expect(movesAt(studio, early + minute).map(each => each.why)).toContainEqual({ code: 'done before', step: step?.name })
+  })
+
+  it('says that somebody does such work no more, where a helper was given it and may do it no longer', async () => {
+    const early = now - 3 * hour
+    const studio = plannedStudio(early, 'mitred-frame', 6)
+    const { db, studioId, members: { helper } } = studio
+    for (const kind of ['bench work', 'packing'] as const) db.insert(memberStepKind).values({ studioId, memberId: helper.id, kind }).run()
+    await planAt(studio, early)
+    const theirs = db.select({ turnId: planEntry.turnId, kind: pieceStep.kind }).from(planEntry).innerJoin(turn, eq(turn.id, planEntry.turnId)).innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).where(eq(planEntry.memberId, helper.id)).all()
+    expect(new Set(theirs.map(each => each.kind))).toEqual(new Set(['bench work', 'packing']))
+    const stayed = { ...studio, db: copyAgain(db) }
+    db.delete(memberStepKind).where(eq(memberStepKind.kind, 'bench work')).run()
+    for (const each of [studio, stayed]) await planAt(each, early + minute)
+    const told = movesAt(studio, early + minute).filter(each => theirs.some(one => one.turnId === each.turnId))
+    expect(told.map(each => each.why)).toContainEqual({ code: 'not theirs', name: 'The helper' })
+    // With those kinds of step still theirs nothing moves.
+    expect(movesAt(stayed, early + minute)).toEqual([])
+    stayed.db.$client.close()
   })
 
   it('names a pin as the root of what follows, also where nobody has told the pinned work', async () => {
