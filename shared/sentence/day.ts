@@ -38,10 +38,28 @@ export function takeDay(tokens: Token[], { now, zone }: Clock): SaidDay | null {
   return null
 }
 
+/** A wall time as it was said, minutes since midnight; `either`: of a clock of twelve hours, and nobody said which half of the day. */
+export interface SaidTime { minutes: number, either: boolean }
+
+const halfDay = 12 * 60
+/** Earlier in the morning than this hands are seldom at work: "yesterday at 4" is the afternoon. Our own figure. */
+const handsUp = 7 * 60
+
+/** The latest moment behind that a wall time may mean, ms UTC: "at 5" at 17:30 was half an hour ago, "at 5" at 9:00 is of this morning. */
+export function lastTime({ minutes, either }: SaidTime, { now, zone }: Clock): number {
+  const today = localDate(now, zone)
+  const meant = either ? [minutes, (minutes + halfDay) % (2 * halfDay)] : [minutes]
+  const behind = meant.flatMap(each => [fromLocal(today, each, zone), fromLocal(addDays(today, -1), each, zone)]).filter(at => at <= now)
+  return Math.max(...behind)
+}
+
 /** A wall time on a day that was named, ms UTC: "at 7" in the evening is 19:00, "at 2" in the night is of the morning after. Null when it is still to come. */
-export function timeOn({ date, part }: SaidDay, minutes: number, { now, zone }: Clock): number | null {
+export function timeOn({ date, part }: SaidDay, said: SaidTime, clock: Clock): number | null {
+  const { now, zone } = clock
+  const { minutes, either } = said
+  if (part === null && either && minutes < handsUp) return timeOn({ date, part }, { minutes: minutes + halfDay, either: false }, clock) ?? timeOn({ date, part }, { minutes, either: false }, clock)
   const morningAfter = part === 'night' && minutes < 6 * 60
-  const later = !morningAfter && part !== null && part !== 'morning' && minutes < 12 * 60
-  const at = fromLocal(morningAfter ? addDays(date, 1) : date, minutes + (later ? 12 * 60 : 0), zone)
+  const later = !morningAfter && part !== null && part !== 'morning' && minutes < halfDay
+  const at = fromLocal(morningAfter ? addDays(date, 1) : date, minutes + (later ? halfDay : 0), zone)
   return at <= now ? at : null
 }

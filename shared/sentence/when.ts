@@ -1,6 +1,6 @@
-import { takeDay, timeOn } from '#shared/sentence/day'
+import { lastTime, takeDay, timeOn } from '#shared/sentence/day'
+import type { SaidTime } from '#shared/sentence/day'
 import type { Token } from '#shared/sentence/tokens'
-import { addDays, fromLocal, localDate } from '#shared/time'
 import type { Clock, TimeAnswer } from '#shared/time'
 
 const minutesIn: Record<string, number> = { minute: 1, min: 1, hour: 60, h: 60 }
@@ -21,36 +21,37 @@ function spanBefore(tokens: readonly Token[], end: number): { minutes: number, f
 /** Minutes that are said by a word of their own before "past" or "to". */
 const partsOfHour: Record<string, number> = { half: 30, quarter: 15 }
 
+/** A time of the clock in a sentence, and how many words of it. */
+interface SaidClock extends SaidTime { length: number }
+/** Of a clock of twelve hours, unless a half of the day was said with it. */
+const isEither = (hour: number, half: string) => hour >= 1 && hour <= 12 && half !== 'am' && half !== 'pm'
+/** Minutes since midnight of an hour with the half of the day that was said: 12 am is midnight. */
+const minutesOf = (hour: number, half: string) => (half === 'pm' && hour < 12 ? hour + 12 : half === 'am' && hour === 12 ? 0 : hour) * 60
+
 /** "half past four", "a quarter to 5", "twenty past two": of an hour's minutes said as a number only past it, for "1 to 4" is a row of pieces. */
-function partedAt(tokens: readonly Token[], at: number): { minutes: number, length: number } | null {
+function partedAt(tokens: readonly Token[], at: number): SaidClock | null {
   const article = tokens[at]?.word === 'a' ? 1 : 0
   const [said, turn, of] = tokens.slice(at + article)
   const minutes = partsOfHour[said?.word ?? ''] ?? (turn?.word === 'past' ? said?.number ?? null : null)
   const hour = of?.number ?? null
   if (minutes === null || minutes >= 60 || hour === null || !Number.isInteger(hour) || hour > 23 || !(turn?.word === 'past' || (turn?.word === 'to' && said?.word === 'quarter'))) return null
   const half = tokens[at + article + 3]?.word ?? ''
-  const late = half === 'pm' && hour < 12 ? 12 : 0
-  const all = (hour + late) * 60 + (turn.word === 'past' ? minutes : -minutes)
-  return { minutes: (all + 24 * 60) % (24 * 60), length: article + (['pm', 'am'].includes(half) ? 4 : 3) }
+  const all = minutesOf(hour, half) + (turn.word === 'past' ? minutes : -minutes)
+  return { minutes: (all + 24 * 60) % (24 * 60), either: isEither(hour, half), length: article + (['pm', 'am'].includes(half) ? 4 : 3) }
 }
 
 /** "14:20" or "14 20" is not a time by itself; "at 14:20" and "at 5" are. */
-function clockAt(tokens: readonly Token[], at: number): { minutes: number, length: number } | null {
+function clockAt(tokens: readonly Token[], at: number): SaidClock | null {
   const [, hours, minutes] = /^(\d{1,2}):(\d\d)$/.exec(tokens[at]?.said ?? '') ?? []
-  if (hours !== undefined && Number(hours) < 24 && Number(minutes) < 60) return { minutes: Number(hours) * 60 + Number(minutes), length: 1 }
+  const half = tokens[at + 1]?.word ?? ''
+  const halfSaid = ['pm', 'am'].includes(half) ? 1 : 0
+  // Whoever writes 04:30 counts to twenty-four.
+  if (hours !== undefined && Number(hours) < 24 && Number(minutes) < 60) return { minutes: minutesOf(Number(hours), half) + Number(minutes), either: isEither(Number(hours), half) && !hours.startsWith('0'), length: 1 + halfSaid }
   const parted = partedAt(tokens, at)
   if (parted) return parted
   const hour = tokens[at]?.number ?? null
   if (hour === null || !Number.isInteger(hour) || hour > 23 || tokens[at - 1]?.word !== 'at') return null
-  const late = tokens[at + 1]?.word === 'pm' && hour < 12
-  return { minutes: (late ? hour + 12 : hour) * 60, length: ['pm', 'am', 'o\'clock'].includes(tokens[at + 1]?.word ?? '') ? 2 : 1 }
-}
-
-/** A wall time that lies behind: today's, or yesterday's when today's is still to come. */
-function lastTime(minutes: number, { now, zone }: Clock): number {
-  const today = localDate(now, zone)
-  const at = fromLocal(today, minutes, zone)
-  return at > now ? fromLocal(addDays(today, -1), minutes, zone) : at
+  return { minutes: minutesOf(hour, half), either: isEither(hour, half), length: halfSaid === 1 || half === 'o\'clock' ? 2 : 1 }
 }
 
 /** When a sentence says it was. A day without an hour that lies behind is no time: last night's coat is not one of now, and its hour is for hands to give. `day` is that day, YYYY-MM-DD. */
@@ -76,7 +77,7 @@ export function takeWhen(tokens: Token[], clock: Clock): SaidWhen {
     if (!found) continue
     const from = ['at', 'since'].includes(tokens[at - 1]?.word ?? '') ? at - 1 : at
     tokens.splice(from, at + found.length - from)
-    const said = day ? timeOn(day, found.minutes, clock) : lastTime(found.minutes, clock)
+    const said = day ? timeOn(day, found, clock) : lastTime(found, clock)
     if (said !== null) return timed({ kind: 'at', at: said })
   }
   if (day) return { when: null, day: day.date }

@@ -79,6 +79,11 @@ describe('when', () => {
     ['on Monday at 9', Date.UTC(2026, 5, 8, 8)], ['on Monday afternoon at 3', Date.UTC(2026, 5, 8, 14)], ['last Wednesday at 9', Date.UTC(2026, 5, 3, 8)]])('"%s"', (text, at) => {
     expect(when(text)).toMatchObject({ when: { kind: 'at', at }, unknown: [] })
   })
+  // It is past three in the afternoon: an hour without its half of the day is the latest that lies behind.
+  it.each<[string, number]>([['at 2', Date.UTC(2026, 5, 10, 13)], ['at half past two', Date.UTC(2026, 5, 10, 13, 30)], ['at 2:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 12', Date.UTC(2026, 5, 10, 11)], ['at 9', Date.UTC(2026, 5, 10, 8)], ['today at 2', Date.UTC(2026, 5, 10, 13)],
+    ['at 02:20', Date.UTC(2026, 5, 10, 1, 20)], ['at 2 am', Date.UTC(2026, 5, 10, 1)], ['at 2:20 pm', Date.UTC(2026, 5, 10, 13, 20)], ['at 12 am', Date.UTC(2026, 5, 9, 23)], ['yesterday at 4', Date.UTC(2026, 5, 9, 15)], ['today at 5', Date.UTC(2026, 5, 10, 4)]])('of the half of the day that was meant: "%s"', (text, at) => {
+    expect(when(text)).toMatchObject({ when: { kind: 'at', at }, unknown: [] })
+  })
   // A coat of last night told as one of now would be ready a night late, and its window shut.
   it.each([['yesterday', '2026-06-09'], ['yesterday evening', '2026-06-09'], ['last night', '2026-06-09'], ['this morning', '2026-06-10'], ['on Monday', '2026-06-08'], ['last Friday evening', '2026-06-05'], ['today', '2026-06-10'], ['this evening at 11', '2026-06-10']])('asks for the hour of "%s"', (text, day) => {
     expect(when(text)).toMatchObject({ when: null, day, unknown: [], pieceIds: [1] })
