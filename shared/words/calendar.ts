@@ -16,6 +16,8 @@ export const calendarWords = {
   everybody: 'Everybody’s',
   make: 'Make my calendar address',
   again: 'Make a new address',
+  againTitle: 'Put a new address in place of this one?',
+  againAsk: 'Calendars that read the address of now get nothing any more. Give each of them the new one.',
   label: 'Address of the calendar',
   made: (time: string) => `Made ${time}. Whoever has the address can read it.`,
   none: 'No address has been made yet.',

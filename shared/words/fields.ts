@@ -18,7 +18,7 @@ export const fields = {
   weekday: 'A weekday is a whole number from 1 (Monday) to 7.',
   hours: 'Working hours are minutes since midnight, from 0 to 1440.',
   quietSpan: 'Quiet hours end at another time than they begin.',
-  minuteOfDay: 'Give a time of day such as 21:00 (minutes since midnight, 0 to 1439).',
+  minuteOfDay: 'Give a time of day, such as 21:00.',
   hoursOrder: 'Working hours end after they begin.',
   hoursApart: 'Two stretches of one day overlap.',
   closureName: 'A name has at most 80 characters.',

@@ -10,6 +10,8 @@ export const sensorWords = {
   none: 'This room has no address for a sensor yet.',
   make: 'Make an address',
   again: 'Make a new address',
+  againTitle: 'Put a new address in place of this one?',
+  againAsk: 'What the sensor sends to the address of now is refused from then on, until it has the new one. What it has told stays.',
   label: (room: string) => `Address of the sensor in ${room}`,
   silent: (made: string) => `Made ${made}. Nothing has come yet.`,
   heard: (when: string) => `Last heard ${when}.`,

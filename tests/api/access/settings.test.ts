@@ -137,7 +137,7 @@ describe('quiet hours', () => {
   })
   it('refuse what is no time of day, and an end at their beginning', async () => {
     const refused = async (fromMin: unknown, toMin: unknown) => (await owner.put<Refused>('/api/calls/quiet', { quiet: { fromMin, toMin } })).body.data.fields
-    expect(await refused(null, 1440)).toEqual({ 'quiet.fromMin': 'Give a time of day such as 21:00 (minutes since midnight, 0 to 1439).', 'quiet.toMin': 'Give a time of day such as 21:00 (minutes since midnight, 0 to 1439).' })
+    expect(await refused(null, 1440)).toEqual({ 'quiet.fromMin': 'Give a time of day, such as 21:00.', 'quiet.toMin': 'Give a time of day, such as 21:00.' })
     expect(await refused(420, 420)).toEqual({ 'quiet.toMin': 'Quiet hours end at another time than they begin.' })
   })
 })
