@@ -21,6 +21,7 @@ export type MoveCause =
   | { code: 'hours', name: string | null }
   | { code: 'not theirs', name: string }
   | { code: 'hands', name: string | null, step: string, batch: string, added: boolean, because?: MoveCause | null }
+  | { code: 'opened', name: string | null }
   | { code: 'freed', name: string | null, step: string, batch: string, gone?: 'done' | 'dropped' | null }
   | { code: 'done before', step: string }
   | { code: 'place', kind: PlaceKind }

@@ -49,6 +49,9 @@ export const pin = sqliteTable('pin', {
   madeByMemberId: integer('made_by_member_id'),
 }, t => [studioKey(t), belongsTo(t, t.turnId, turn), within(t, t.memberId, member), within(t, t.actId, act), within(t, t.madeByMemberId, member)])
 
+/** Working hours in local wall time, of the studio (`memberId` null) and of people, and days without work. */
+export interface PlannedHours { open: { memberId: number | null, weekday: number, fromMin: number, toMin: number }[], closed: { memberId: number | null, fromDate: string, toDate: string }[] }
+
 export const plan = sqliteTable('plan', {
   id: id(),
   studioId: studioColumn(),
@@ -58,6 +61,8 @@ export const plan = sqliteTable('plan', {
   status: text('status').$type<'optimal' | 'feasible' | 'infeasible'>().notNull(),
   objective: text('objective', { mode: 'json' }).$type<Record<string, number>>().notNull(),
   clashes: text('clashes', { mode: 'json' }).$type<string[]>().notNull(),
+  /** The hours and days without work that it was made for; null for a plan of before they were kept. */
+  hours: text('hours', { mode: 'json' }).$type<PlannedHours>(),
   current: flag('current').notNull(),
 }, t => [studioKey(t), oneOf('plan_status', t.status, planStatuses), uniqueIndex('plan_now').on(t.studioId).where(sql`${t.current} = 1`)])
 

@@ -57,8 +57,9 @@ function readLast(db: Database, studioId: number) {
   const over = sql`(${turn.status} in ('done', 'left out') or ${pieceStep.status} in ('done', 'set aside', 'left out') or ${piece.goneAt} is not null or ${batch.closedAt} is not null)`
   const lastOver = db.select({ turnId: turn.id, stepId: turn.stepId, status: turn.status, step: pieceStep.name, batch: batch.name }).from(plan).innerJoin(planEntry, eq(planEntry.planId, plan.id)).innerJoin(turn, eq(turn.id, planEntry.turnId))
     .innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).innerJoin(piece, eq(piece.id, pieceStep.pieceId)).innerJoin(batch, eq(batch.id, piece.batchId)).where(and(inForce, over)).all()
+  const lastHours = db.select({ hours: plan.hours }).from(plan).where(inForce).get()?.hours ?? null
   const pins = db.select().from(pin).where(scoped(pin, studioId)).all()
-  return { last, lastChanges, lastHolds, lastOver, pins }
+  return { last, lastHours, lastChanges, lastHolds, lastOver, pins }
 }
 
 /** The material editions that coats to come will need times for. */

@@ -1,3 +1,4 @@
+import type { PlannedHours } from '~~/db/schema'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { handsId } from '~~/server/planning/ids'
 import { openSpans } from '#shared/open-hours'
@@ -11,8 +12,11 @@ const minute = 60_000
 /** A pair of hands: a member in their own hours, or in the studio's where they keep none of their own. Minutes from `zeroAt`. */
 export interface Hands { id: string, memberId: number, open: Interval[], may: (kind: StepKind) => boolean }
 
+/** Of a plan's facts what says who works when. */
+type HandsFacts = Pick<PlanFacts, 'members' | 'kinds'> & { hours: PlannedHours['open'], closures: PlannedHours['closed'] }
+
 /** Everybody who can do steps, with when they work between two instants (ms UTC). */
-export function handsOf(facts: PlanFacts, zone: StudioZone, zeroAt: number, untilAt: number): Hands[] {
+export function handsOf(facts: HandsFacts, zone: StudioZone, zeroAt: number, untilAt: number): Hands[] {
   const studioHours = facts.hours.filter(each => each.memberId === null)
   const studioClosed = facts.closures.filter(each => each.memberId === null)
   return facts.members.map(({ id, role }) => {

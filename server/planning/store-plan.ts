@@ -1,5 +1,6 @@
 import { eq, sql } from 'drizzle-orm'
 import { plan as planTable, planChange, planEntry, planHold, planMate, planSession } from '~~/db/schema'
+import type { PlannedHours } from '~~/db/schema'
 import { clashSentences } from '~~/server/planning/clashes'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { familyOf } from '~~/server/planning/problem'
@@ -25,7 +26,7 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
   const at = (minutes: number | null) => (minutes === null ? null : given.zeroAt + minutes * minute)
   const planId = tx.insert(planTable).values({
     studioId, madeAt: now, revision: sql<number>`(select revision from studio where id = ${studioId})`, seed: made.seed, status: made.status, objective: { ...made.objective },
-    clashes: clashSentences(made, given), current: true,
+    clashes: clashSentences(made, given), hours: hoursOf(facts), current: true,
   }).returning({ id: planTable.id }).get().id
   const roomOf = new Map(given.works.map(work => [familyOf(work), work.roomId]))
   const setupOf = new Map(given.problem.families.map(family => [family.id, family.setup]))
@@ -54,6 +55,11 @@ export function storePlan(tx: Transaction, facts: PlanFacts, given: StudioProble
   for (const part of partsOf(holdsOf(facts, rows, now))) tx.insert(planHold).values(part.map(hold => ({ studioId, planId, ...hold }))).run()
   return planId
 }
+
+/** The hours that a plan was made for. */
+const hoursOf = ({ hours, closures }: PlanFacts): PlannedHours => ({
+  open: hours.map(({ memberId, weekday, fromMin, toMin }) => ({ memberId, weekday, fromMin, toMin })), closed: closures.map(({ memberId, fromDate, toDate }) => ({ memberId, fromDate, toDate })),
+})
 
 /** Whose hands an entry takes. */
 const membersOf = (entry: Plan['entries'][number]) => entry.resources.map(memberIdOf)

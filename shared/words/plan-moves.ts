@@ -48,6 +48,7 @@ export function causeText(why: MoveCause, clock: Clock, units: Units): string {
     case 'hours': return why.name === null ? 'nobody who may do it works then' : `${why.name} does not work then`
     case 'not theirs': return `${why.name} does not do such work any more`
     case 'hands': return `${why.name ?? 'everybody who may do it'} is at ${titled(why.step)} of ${why.added ? 'the new batch ' : ''}${why.batch} then${why.name === null ? ' or at other work' : ''}${why.because ? `; that moved because ${causeText(why.because, clock, units)}` : ''}`
+    case 'opened': return `${why.name ?? 'somebody who may do it'} works then now`
     case 'freed': return `${why.name ?? 'somebody'} is free then, since ${titled(why.step)} of ${why.batch} ${why.gone === 'done' ? 'is done' : why.gone === 'dropped' ? 'is no longer to be done' : 'lies elsewhere now'}`
     case 'done before': return `${titled(why.step)} before it is done already`
     case 'place': return `${places[why.kind]} then`

@@ -126,6 +126,29 @@ describe('what moved', () => {
     stayed.db.$client.close()
   })
 
+  it.each([
+    ['the studio', 'mitred-frame', { code: 'opened', name: null }, 'somebody who may do it works then now'],
+    ['one person', 'laminated-boards', { code: 'opened', name: 'The maker' }, 'The maker works then now'],
+  ] as const)('names hours of %s that were given back where work moves sooner by them, which without that it would not', async (whose, schedule, why, says) => {
+    const early = now - 3 * hour
+    const studio = plannedStudio(early, schedule, 1)
+    const { db, studioId, members } = studio
+    const ones = whose === 'one person'
+    if (ones) db.update(member).set({ leftAt: early - hour }).where(eq(member.role, 'owner')).run()
+    db.insert(closure).values({ studioId, memberId: ones ? members.maker.id : null, name: 'Away', fromDate: '2026-04-07', toDate: '2026-04-09' }).run()
+    await planAt(studio, early)
+    const stayed = { ...studio, db: copyAgain(db) }
+    db.delete(closure).run()
+    await planAt(studio, early + minute)
+    const told = movesAt(studio, early + minute)
+    expect(told.length).toBeGreaterThan(0)
+    expect(told.map(each => each.why)).toContainEqual(why)
+    expect(causeText(why, { now: early, zone }, 'metric')).toBe(says)
+    await planAt(stayed, early + minute)
+    expect(movesAt(stayed, early + minute)).toEqual([])
+    stayed.db.$client.close()
+  })
+
   it('does not blame a window that was missed in the last plan as well', async () => {
     const early = now - 3 * hour
     // Open for 75 minutes a day: windows shut in between.
