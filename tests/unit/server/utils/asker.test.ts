@@ -83,7 +83,7 @@ describe('a worker that fails', () => {
   it('is ended when it falls silent, and let go when nobody asks', async () => {
     const file = join(folder, 'silent.mjs')
     writeFileSync(file, 'import { parentPort } from "node:worker_threads"; let n = 0; parentPort.on("message", ({ id, now }) => { if (now > 0) parentPort.postMessage({ id, ok: true, answer: ++n }) })')
-    const asker = new Asker({ worker: pathToFileURL(file), patience: 200, idle: 50 })
+    const asker = new Asker({ worker: pathToFileURL(file), patience: 2000, idle: 50 })
     await expect(asker.ask(db, 'promises', { studioId: 1 }, 0)).rejects.toThrow('said nothing')
     expect(await asker.ask(db, 'promises', { studioId: 1 }, 1)).toBe(1)
     await new Promise(resolve => setTimeout(resolve, 300))
