@@ -53,6 +53,12 @@ export const blockTitle = ({ stepKind, step, kind, pieces }: PlanBlock) => `${as
 /** "9:15 to 10:40", with the day when it is another. */
 export const blockTime = ({ fromAt, toAt }: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock) => `${clockTime(fromAt, clock)} to ${localDate(fromAt, clock.zone) === localDate(toAt, clock.zone) ? clockFace(clock.zone.wall(toAt).minutes) : clockTime(toAt, clock)}`
 
+/** When a block is, with its day apart: a drawing shows the day by where the block stands, a reader has to hear it. "Fri " and "8:30 to 9:15"; no day today. */
+export function blockDayTime(block: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: Clock): { day: string, hours: string } {
+  const [, day = '', hours = ''] = /^(\D{3} )?(.*)$/.exec(blockTime(block, clock)) ?? []
+  return { day, hours }
+}
+
 /** What is known of a block beside its time, one sentence each. */
 export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'lastStartAt' | 'with'>, clock: Clock): string[] {
   return [

@@ -42,17 +42,6 @@ afterAll(async () => {
 })
 
 describe('the plan on Week', () => {
-  it('says the day of a peg that is not of today, which the drawing shows', async () => {
-    const { page } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
-    await visit(page, '/week')
-    const another = page.getByRole('button', { name: /^(Mon|Tue|Wed|Thu|Fri|Sat|Sun) .*Bowl/ })
-    await page.getByRole('button', { name: /to .*Bowls? 1/ }).first().waitFor()
-    const later = page.getByRole('button', { name: 'Later days' })
-    for (let days = 0; days < 20 && await another.count() === 0 && await later.isEnabled(); days++) await later.click()
-    expect(await another.count()).toBeGreaterThan(0)
-    await page.context().close()
-  })
-
   it('is pinned by keyboard, let go again, and pinned by a drag', async () => {
     const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, owner)
     await visit(page, '/week')
