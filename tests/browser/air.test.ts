@@ -27,12 +27,14 @@ afterAll(async () => {
   await server.stop()
 })
 
-/** A file with semicolons, decimal commas and days first, a reading every ten minutes up to now, and one line nobody can read. */
+/** One moment for all files: a second one of the same readings must not be a minute off. */
+const writtenAt = Math.floor(Date.now() / minute) * minute
+
+/** A file with semicolons, decimal commas and days first, a reading every ten minutes up to when it was written, and one line nobody can read. */
 function loggerFile(readings: number, badAfter: number | null): { name: string, mimeType: string, buffer: Buffer } {
-  const now = Math.floor(Date.now() / minute) * minute
   const two = (value: number) => String(value).padStart(2, '0')
   const lines = Array.from({ length: readings }, (_, i) => {
-    const at = new Date(now - (readings - i) * 10 * minute)
+    const at = new Date(writtenAt - (readings - i) * 10 * minute)
     const day = `${two(at.getUTCDate())}.${two(at.getUTCMonth() + 1)}.${at.getUTCFullYear()}`
     return `${day} ${two(at.getUTCHours())}:${two(at.getUTCMinutes())};${(16 + i % 5).toFixed(1).replace('.', ',')};${(60 + i % 7).toFixed(1).replace('.', ',')}`
   })
