@@ -12,6 +12,15 @@ const minute = 60_000
 /** A pair of hands: a member in their own hours, or in the studio's where they keep none of their own. Minutes from `zeroAt`. */
 export interface Hands { id: string, memberId: number, open: Interval[], may: (kind: StepKind) => boolean }
 
+/**
+ * Whose hands do work that wants `count` at once.
+ * @param able those who may do it
+ * @param wished members who are to do it if they may, the first before the others
+ */
+export function chosenHands(able: readonly string[], wished: readonly number[], count: number): string[] {
+  return [...new Set([...wished.map(handsId).filter(id => able.includes(id)), ...able])].slice(0, count)
+}
+
 /** Of a plan's facts what says who works when. */
 type HandsFacts = Pick<PlanFacts, 'members' | 'kinds'> & { hours: PlannedHours['open'], closures: PlannedHours['closed'] }
 

@@ -1,4 +1,4 @@
-import { handsOf } from '~~/server/planning/hands'
+import { chosenHands, handsOf } from '~~/server/planning/hands'
 import type { Hands } from '~~/server/planning/hands'
 import { indexOf } from '~~/server/planning/fact-index'
 import type { PlanFacts } from '~~/server/planning/facts'
@@ -163,14 +163,15 @@ function jobsOf(works: readonly StepWork[], facts: PlanFacts, zeroAt: number): N
   })
 }
 
-/** Work in hand stays with who is at it; a pin stays where somebody put it. */
+/** Work in hand stays with who is at it, and a pin where somebody put it; whoever the last plan gave it to beside them stays too. */
 function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCome, hands: readonly Hands[], zeroAt: number): Fixed[] {
+  const last = new Map(facts.last.map(entry => [entry.turnId, entry]))
   // Of several pins of one turn the first counts.
   const pins = new Map(facts.pins.filter(pin => pin.startsAt >= zeroAt).reverse().map(pin => [pin.turnId, pin]))
   return works.flatMap(work => work.turns.flatMap((turn) => {
     const { step } = work
-    const able = () => handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind))
-    const chosen = (memberId: number | null) => able().sort((a, b) => Number(b.memberId === memberId) - Number(a.memberId === memberId)).slice(0, step.hands).map(each => each.id)
+    const able = () => handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind)).map(each => each.id)
+    const chosen = (memberId: number | null) => chosenHands(able(), [...memberId === null ? [] : [memberId], ...last.get(turn.id)?.memberIds ?? []], step.hands)
     if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor), resources: chosen(turn.doingMemberId) }]
     const pinned = pins.get(turn.id)
     return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId) }] : []

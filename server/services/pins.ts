@@ -3,6 +3,7 @@ import { pin, turn } from '~~/db/schema'
 import { clashSentences } from '~~/server/planning/clashes'
 import { readPlanFacts } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
+import { chosenHands } from '~~/server/planning/hands'
 import { activityId, handsId, memberIdOf } from '~~/server/planning/ids'
 import { pinClash } from '~~/server/planning/pin-check'
 import type { PinStudio, Wanted } from '~~/server/planning/pin-check'
@@ -91,10 +92,8 @@ function wishes({ facts, given }: PinStudio, { turnIds, memberId }: PinBody, sta
   const found = order.map((turnId): Wanted | null => {
     const activity = given.problem.activities.find(each => each.id === activityId(turnId))
     if (!activity) return null
-    const wish = memberId ?? last.get(turnId)?.memberId ?? null
-    const wished = wish === null ? null : handsId(wish)
-    const able = activity.choices[0]?.of ?? []
-    const hands = [...able].sort((a, b) => Number(b === wished) - Number(a === wished)).slice(0, activity.choices[0]?.count ?? 0)
+    const wished = [...memberId === null ? [] : [memberId], ...last.get(turnId)?.memberIds ?? []]
+    const hands = chosenHands(activity.choices[0]?.of ?? [], wished, activity.choices[0]?.count ?? 0)
     const each = { turnId, start, end: start + activity.minutes, hands }
     start = each.end
     return each

@@ -54,10 +54,13 @@ export function lastTime({ minutes, either }: SaidTime, { now, zone }: Clock): n
 }
 
 /** A wall time on a day that was named, ms UTC: "at 7" in the evening is 19:00, "at 2" in the night is of the morning after. Null when it is still to come. */
-export function timeOn({ date, part }: SaidDay, said: SaidTime, clock: Clock): number | null {
-  const { now, zone } = clock
-  const { minutes, either } = said
-  if (part === null && either && minutes < handsUp) return timeOn({ date, part }, { minutes: minutes + halfDay, either: false }, clock) ?? timeOn({ date, part }, { minutes, either: false }, clock)
+export function timeOn({ date, part }: SaidDay, { minutes, either }: SaidTime, { now, zone }: Clock): number | null {
+  if (part === null && either) {
+    const [early, late] = [minutes % halfDay, minutes % halfDay + halfDay].map(each => fromLocal(date, each, zone)) as [number, number]
+    // Today it is the latest behind, as without a day; on another it is when hands are at work.
+    const meant = date === localDate(now, zone) || minutes % halfDay < handsUp ? [late, early] : [early, late]
+    return meant.find(at => at <= now) ?? null
+  }
   const morningAfter = part === 'night' && minutes < 6 * 60
   const later = !morningAfter && part !== null && part !== 'morning' && minutes < halfDay
   const at = fromLocal(morningAfter ? addDays(date, 1) : date, minutes + (later ? halfDay : 0), zone)

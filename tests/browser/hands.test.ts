@@ -1,41 +1,10 @@
-import Database from 'better-sqlite3'
-import type { Browser, Locator, Page } from 'playwright-core'
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
-import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
-import { startServer } from '../helpers/server'
-import type { TestServer } from '../helpers/server'
-import { firstStudio, joinAs } from '../helpers/sign-in'
-import type { Visitor } from '../helpers/sign-in'
+import type { Locator } from 'playwright-core'
+import { describe, expect, it } from 'vitest'
+import { axeProblems, openPage, visit } from '../helpers/browser'
+import { filmsOf, hands, jobOf, made, piecesOf, standHandsStudio, startBatch, told } from '../helpers/hands-studio'
 
 const minute = 60_000
-let server: TestServer
-let browser: Browser
-let maker: Visitor
-let helper: Visitor
-let shelfId: number
-let keys = 0
-
-interface StateWire { pieces: { id: number, name: string, version: number, groups: { films: { actId: number, endedAt: string, material: string | null, milestones: { name: string, likelyAt: string | null, p90At: string | null }[] }[] }[] }[] }
-
-const made = async (who: Visitor, path: string, body: unknown) => {
-  const answer = await who.post<{ id: number, actId: number, pieceIds: number[] }>(path, body)
-  if (answer.status !== 200) throw new Error(`${path} was answered with ${answer.status}: ${JSON.stringify(answer.body)}`)
-  return answer.body
-}
-const piecesOf = async (prefix: string) => (await maker.get<StateWire>('/api/state')).body.pieces.filter(piece => piece.name.startsWith(prefix))
-const filmsOf = (pieces: StateWire['pieces']) => pieces.flatMap(piece => piece.groups.flatMap(group => group.films))
-
-/** Starts a batch of so many pieces that wait for their first paint, so many hours ago. */
-async function startBatch(name: string, count: number, scheduled = true, hoursAgo = 6) {
-  const file = new Database(server.databaseFile, { readonly: true })
-  const schedule = file.prepare('select id from finishing_schedule where library_key = ?').get('painted-waxed-box') as { id: number }
-  file.close()
-  const startsAt = new Date(Date.now() - hoursAgo * 60 * minute).toISOString()
-  await made(maker, '/api/batches', { clientKey: `batch-of-test-${++keys}`, name: `${name} batch`, scheduleId: scheduled ? schedule.id : null, pieces: Array.from({ length: count }, (_, i) => `${name} ${i + 1}`), placeId: shelfId, order: null, startsAt })
-}
-
-const jobOf = (page: Page, step: string, names: string) => page.getByRole('article').filter({ has: page.getByRole('heading', { name: `${step} ${names}` }) })
-const told = (page: Page) => page.getByRole('region', { name: 'Told' })
+standHandsStudio()
 
 /** A thumb that counts its taps. */
 function thumb() {
@@ -49,30 +18,10 @@ function thumb() {
   }
 }
 
-beforeAll(async () => {
-  server = await startServer()
-  const owner = await firstStudio(server.origin)
-  maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
-  helper = await joinAs(server.origin, owner, 'helper', 'hazel@example.test')
-  const room = await made(owner, '/api/rooms', { name: 'Bench room', heated: true, outdoor: false, sprayArea: false, sleptIn: false, volumeM3: 60, exhaustM3H: null, nightDropC: 4, sort: 0 })
-  shelfId = (await made(owner, '/api/places', { roomId: room.id, name: 'Shelf A', kind: 'shelf', capacity: 60, sort: 0 })).id
-  browser = await openBrowser()
-})
-afterAll(async () => {
-  await browser.close()
-  await server.stop()
-})
-
-/** Each test begins with an empty studio: what the last one left has gone out. */
-afterEach(async () => {
-  const pieces = (await piecesOf('')).map(({ id, version }) => ({ id, version }))
-  if (pieces.length > 0) await made(maker, '/api/acts', { clientKey: `gone-${++keys}-of-test`, kind: 'gone', doneAt: new Date().toISOString(), pieces, body: {} })
-})
-
 describe('a maker\'s thumb on a phone', () => {
   it('says that a coat is on a whole group, twenty minutes ago, in two taps; moves it and takes it back', async () => {
     await startBatch('Tide box', 4)
-    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    const { page, problems } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/hands')
     const job = jobOf(page, 'First paint on the lid top', 'Tide boxes 1–\u20604')
     const { tap, taps } = thumb()
@@ -103,7 +52,7 @@ describe('a maker\'s thumb on a phone', () => {
 
   it('says it of four of six in four taps', async () => {
     await startBatch('Ledger', 6)
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/hands')
     const job = jobOf(page, 'First paint on the lid top', 'Ledgers 1–\u20606')
     const { tap, taps } = thumb()
@@ -122,13 +71,13 @@ describe('a maker\'s thumb on a phone', () => {
     await startBatch('Frame', 1, true, 48)
     const [piece] = await piecesOf('Frame')
     if (!piece) throw new Error('The batch has no piece.')
-    const { actId } = await made(maker, '/api/acts', { clientKey: 'coat-of-frame-1', kind: 'coat on', doneAt: new Date(Date.now() - 60 * minute).toISOString(), pieces: [{ id: piece.id, version: piece.version }], body: { step: 'lid-1' } })
+    const { actId } = await made(hands.maker, '/api/acts', { clientKey: 'coat-of-frame-1', kind: 'coat on', doneAt: new Date(Date.now() - 60 * minute).toISOString(), pieces: [{ id: piece.id, version: piece.version }], body: { step: 'lid-1' } })
     const rung = async () => filmsOf(await piecesOf('Frame'))[0]?.milestones.find(each => each.name === 'dry-to-sand-lightly')
     const likely = Date.parse((await rung())?.likelyAt ?? '')
     // Moved back in time until it was likely ready ten minutes ago: then a thumb that says no moves it.
-    await made(maker, `/api/acts/${actId}/correct`, { clientKey: 'correct-frame-1', doneAt: new Date(Date.now() - 60 * minute - (likely - Date.now()) - 10 * minute).toISOString() })
+    await made(hands.maker, `/api/acts/${actId}/correct`, { clientKey: 'correct-frame-1', doneAt: new Date(Date.now() - 60 * minute - (likely - Date.now()) - 10 * minute).toISOString() })
     const before = Date.parse((await rung())?.likelyAt ?? '')
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/hands')
     const job = jobOf(page, 'Turn the lid over onto points', 'Frame 1: lid')
     const { tap, taps } = thumb()
@@ -142,7 +91,7 @@ describe('a maker\'s thumb on a phone', () => {
 
   it('puts something on three pieces in five taps, without a schedule', async () => {
     await startBatch('Sample', 5, false)
-    const { page, problems } = await openPage(browser, server.origin, {}, maker)
+    const { page, problems } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/put-on')
     const { tap, taps } = thumb()
     await tap(page.getByLabel('Acrylic varnish', { exact: true }))
@@ -157,7 +106,7 @@ describe('a maker\'s thumb on a phone', () => {
 
   it('is offered the step that waits for exactly this material', async () => {
     await startBatch('Casket', 2)
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/put-on')
     await page.getByLabel('Something else').selectOption({ label: 'Chalk-type paint' }).catch(() => page.getByLabel('Chalk-type paint').check())
     await page.getByRole('button', { name: 'Casket 1', exact: true }).click()
@@ -170,14 +119,14 @@ describe('a maker\'s thumb on a phone', () => {
 describe('the hands screen', () => {
   it('shows what stands now when somebody else was first, and says it again', async () => {
     await startBatch('Crate', 1)
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     // The page does not hear of it: the live word and the state are held back until the tap.
     await page.route('**/api/live', route => route.abort())
     await visit(page, '/hands')
     const job = jobOf(page, 'First paint on the lid top', 'Crate 1: lid')
     await job.waitFor()
     const [piece] = await piecesOf('Crate')
-    await made(helper, '/api/acts', { clientKey: 'seen-crate-1', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece?.id, version: piece?.version }], body: {} })
+    await made(hands.helper, '/api/acts', { clientKey: 'seen-crate-1', kind: 'seen', doneAt: new Date().toISOString(), pieces: [{ id: piece?.id, version: piece?.version }], body: {} })
     await job.getByRole('button', { name: 'Coat is on' }).click()
     await told(page).getByText('Somebody else was at this piece a moment ago.').waitFor()
     await told(page).getByRole('button', { name: 'Say it again' }).click()
@@ -186,7 +135,7 @@ describe('the hands screen', () => {
 
   it('speaks of what a tap did and not of its way there, and lets the keyboard go on from it', async () => {
     await startBatch('Salver', 1)
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/hands')
     await page.route('**/api/acts', async (route) => {
       await page.waitForTimeout(500)
@@ -207,93 +156,9 @@ describe('the hands screen', () => {
     await expect.poll(focused).toBe('Told')
   })
 
-  it('keeps a tap that does not get through, marks it, and tells it later', async () => {
-    await startBatch('Trough', 1)
-    const { page } = await openPage(browser, server.origin, {}, maker)
-    await visit(page, '/hands')
-    await page.route('**/api/acts', route => route.abort())
-    await jobOf(page, 'First paint on the lid top', 'Trough 1: lid').getByRole('button', { name: 'Coat is on' }).click()
-    await told(page).getByText('It is kept on this device').waitFor()
-    await page.getByText('One tap is not told yet.').waitFor()
-    await page.unroute('**/api/acts')
-    await page.getByRole('button', { name: 'Tell them now' }).click()
-    await page.getByText('One tap is not told yet.').waitFor({ state: 'detached' })
-    expect(filmsOf(await piecesOf('Trough'))).toHaveLength(1)
-  })
-
-  it.each([['Skep', 'when they are told together'], ['Trug', 'when the next tap is the one that gets through']])('tells taps on one piece in the order of the hands: %s, %s', async (name, how) => {
-    await startBatch(name, 1)
-    const { page } = await openPage(browser, server.origin, {}, maker)
-    await visit(page, '/hands')
-    await page.route('**/api/acts', route => route.abort())
-    const job = jobOf(page, 'First paint on the lid top', `${name} 1: lid`)
-    await job.getByRole('button', { name: 'I am starting' }).click()
-    await page.getByText('One tap is not told yet.').waitFor()
-    if (how === 'when they are told together') {
-      await job.getByRole('button', { name: 'Coat is on' }).click()
-      await page.getByText('2 taps are not told yet.').waitFor()
-      await page.unroute('**/api/acts')
-      await page.getByRole('button', { name: 'Tell them now' }).click()
-    }
-    else {
-      await page.unroute('**/api/acts')
-      await job.getByRole('button', { name: 'Coat is on' }).click()
-    }
-    await expect.poll(async () => filmsOf(await piecesOf(name)).length).toBe(1)
-    await page.getByText(/not told yet/).first().waitFor({ state: 'detached' })
-    const [piece] = await piecesOf(name)
-    const story = (await maker.get<{ history: { kind: string }[] }>(`/api/pieces/${piece?.id}`)).body.history.map(act => act.kind)
-    expect(story).toEqual(expect.arrayContaining(['began', 'coat on']))
-    expect(await page.getByText(/Somebody else was at/).count()).toBe(0)
-  })
-
-  it('says again what was refused when it came through late', async () => {
-    await startBatch('Creel', 1)
-    const { page } = await openPage(browser, server.origin, {}, maker)
-    await visit(page, '/hands')
-    await page.route('**/api/acts', route => route.abort())
-    await jobOf(page, 'First paint on the lid top', 'Creel 1: lid').getByRole('button', { name: 'Coat is on' }).click()
-    await page.getByText('One tap is not told yet.').waitFor()
-    const pieces = (await piecesOf('Creel')).map(({ id, version }) => ({ id, version }))
-    await made(helper, '/api/acts', { clientKey: `seen-${++keys}-of-test`, kind: 'seen', doneAt: new Date().toISOString(), pieces, body: {} })
-    await page.unroute('**/api/acts')
-    await page.getByRole('button', { name: 'Tell them now' }).click()
-    await page.getByText(/Coat on\. Creel 1, .*Somebody else was at/).waitFor()
-    await page.getByRole('button', { name: 'Say it again' }).click()
-    await told(page).getByText(/Coat on.* Creel 1/).waitFor()
-    expect(await page.getByText(/Somebody else was at/).count()).toBe(0)
-    expect(filmsOf(await piecesOf('Creel'))).toHaveLength(1)
-  })
-
-  it('takes a tap back that is not told yet, and keeps a late refusal until it is put away', async () => {
-    await startBatch('Pestle', 2)
-    const { page } = await openPage(browser, server.origin, {}, maker)
-    await visit(page, '/hands')
-    await page.route('**/api/acts', route => route.abort())
-    const job = jobOf(page, 'First paint on the lid top', 'Pestles 1 and 2: lid')
-    await job.getByRole('button', { name: 'Coat is on' }).click()
-    await told(page).getByText('It is kept on this device').waitFor()
-    await told(page).getByRole('button', { name: 'Undo' }).click()
-    await page.getByText('One tap is not told yet.').waitFor({ state: 'detached' })
-    await job.getByRole('button', { name: 'Coat is on' }).click()
-    await page.getByText('One tap is not told yet.').waitFor()
-    // Somebody else is first meanwhile, so that the tap is refused when it comes through.
-    const pieces = (await piecesOf('Pestle')).map(({ id, version }) => ({ id, version }))
-    await made(helper, '/api/acts', { clientKey: `seen-${++keys}-of-test`, kind: 'seen', doneAt: new Date().toISOString(), pieces, body: {} })
-    await page.unroute('**/api/acts')
-    await page.getByRole('button', { name: 'Tell them now' }).click()
-    const refusal = page.getByText(/Coat on\. Pestles 1 and 2, .*Somebody else was at/)
-    await refusal.waitFor()
-    await page.reload()
-    await refusal.waitFor()
-    await page.getByRole('button', { name: 'Leave it' }).first().click()
-    await refusal.waitFor({ state: 'detached' })
-    expect(filmsOf(await piecesOf('Pestle'))).toHaveLength(0)
-  })
-
   it('is worked by the keyboard alone', async () => {
     await startBatch('Panel', 1)
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/hands')
     const tabTo = async (target: Locator) => {
       for (let presses = 0; presses < 150; presses++) {
@@ -321,7 +186,7 @@ describe('the hands screen', () => {
 
   it('gives a helper only the keys a helper has', async () => {
     await startBatch('Chest', 2)
-    const { page } = await openPage(browser, server.origin, {}, helper)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.helper)
     await visit(page, '/hands')
     await page.getByRole('heading', { name: 'For others' }).waitFor()
     expect(await page.getByRole('button', { name: 'Coat is on' }).count()).toBe(0)
@@ -329,7 +194,7 @@ describe('the hands screen', () => {
 
   it('names the pieces on every key of a job that is laid open, for the same words stand on the keys of the next', async () => {
     await startBatch('Hamper', 2)
-    const { page } = await openPage(browser, server.origin, {}, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, {}, hands.maker)
     await visit(page, '/hands')
     const job = jobOf(page, 'First paint on the lid top', 'Hampers 1 and 2')
     // The answers to what is to be minded are named by the group that says the sentence.
@@ -342,7 +207,7 @@ describe('the hands screen', () => {
 
   it.each(['light', 'dark'] as const)('has nothing that axe objects to in the %s scheme', async (colorScheme) => {
     await startBatch('Trunk', 3)
-    const { page } = await openPage(browser, server.origin, { colorScheme }, maker)
+    const { page } = await openPage(hands.browser, hands.server.origin, { colorScheme }, hands.maker)
     await visit(page, '/hands')
     expect(await axeProblems(page)).toEqual([])
     await page.getByRole('button', { name: /^More about/ }).first().click()

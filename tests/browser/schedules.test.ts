@@ -1,31 +1,9 @@
-import type { Browser, Locator, Page } from 'playwright-core'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { axeProblems, openBrowser, openPage, visit } from '../helpers/browser'
-import { startServer } from '../helpers/server'
-import type { TestServer } from '../helpers/server'
-import { firstStudio, joinAs } from '../helpers/sign-in'
-import type { Visitor } from '../helpers/sign-in'
-import { roomOf } from '../api/access/rows'
+import type { Locator, Page } from 'playwright-core'
+import { describe, expect, it } from 'vitest'
+import { axeProblems, openPage, visit } from '../helpers/browser'
+import { editing, key, standScheduleStudio, steps } from '../helpers/schedule-studio'
 
-let server: TestServer
-let browser: Browser
-let owner: Visitor
-let maker: Visitor
-let helper: Visitor
-
-beforeAll(async () => {
-  server = await startServer()
-  owner = await firstStudio(server.origin)
-  maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
-  helper = await joinAs(server.origin, owner, 'helper', 'hazel@example.test')
-  const { body: room } = await owner.post<{ id: number }>('/api/rooms', roomOf('Bench'))
-  await owner.post('/api/places', { roomId: room.id, name: 'Shelf A', kind: 'shelf', capacity: 20, sort: 0 })
-  browser = await openBrowser()
-})
-afterAll(async () => {
-  await browser.close()
-  await server.stop()
-})
+standScheduleStudio()
 
 const isFocused = (what: Locator) => what.evaluateAll(found => found.some(each => each === document.activeElement))
 
@@ -41,14 +19,12 @@ async function press(page: Page, what: Locator) {
   await tabTo(page, what)
   await page.keyboard.press('Enter')
 }
-const key = (page: Page, name: string | RegExp) => page.getByRole('button', { name, exact: typeof name === 'string' })
 const dialog = (page: Page) => page.getByRole('dialog', { name: 'Add a step' })
-const steps = (page: Page) => page.locator('[id^="open-"]')
 const elapsed = (page: Page) => page.locator('[data-elapsed]')
 
 describe('a schedule made by keyboard only', () => {
   it('has its steps, waits and times, and is kept', async () => {
-    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, maker)
+    const { page, problems } = await openPage(editing.browser, editing.server.origin, { viewport: { width: 1440, height: 900 } }, editing.maker)
     await visit(page, '/schedules')
     await press(page, page.getByRole('link', { name: 'New schedule' }))
     await tabTo(page, page.getByRole('textbox', { name: 'Name', exact: true }))
@@ -111,7 +87,7 @@ describe('a schedule made by keyboard only', () => {
 
 describe('a figure or a check that cannot be', () => {
   it('is said beside its field, holds up saving, and takes nothing else with it; the focus is never lost', async () => {
-    const { page, problems } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, maker)
+    const { page, problems } = await openPage(editing.browser, editing.server.origin, { viewport: { width: 1440, height: 900 } }, editing.maker)
     await visit(page, '/schedules/new')
     await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Tray')
     await page.getByRole('textbox', { name: 'What it is for' }).fill('For tea.')
@@ -172,8 +148,8 @@ describe('a figure or a check that cannot be', () => {
   })
 
   it('is said first where nothing else was changed', async () => {
-    const { page } = await openPage(browser, server.origin, {}, maker)
-    const list = (await maker.get<{ id: number, libraryKey: string }[]>('/api/schedules')).body
+    const { page } = await openPage(editing.browser, editing.server.origin, {}, editing.maker)
+    const list = (await editing.maker.get<{ id: number, libraryKey: string }[]>('/api/schedules')).body
     await visit(page, `/schedules/${list[0]?.id}/edit`)
     await steps(page).first().click()
     await page.getByRole('textbox', { name: 'Set up, once' }).fill('half an hour')
@@ -186,7 +162,7 @@ describe('a figure or a check that cannot be', () => {
 
 describe('a schedule made by touch on a phone', () => {
   it('takes three taps for a coat more, refuses what cannot be with the step named, and starts a batch', async () => {
-    const { page, problems } = await openPage(browser, server.origin, { hasTouch: true, isMobile: true }, maker)
+    const { page, problems } = await openPage(editing.browser, editing.server.origin, { hasTouch: true, isMobile: true }, editing.maker)
     await visit(page, '/schedules/new')
     await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Small box')
     let taps = 0
@@ -235,46 +211,9 @@ describe('a schedule made by touch on a phone', () => {
   })
 })
 
-describe('two editors at once', () => {
-  it('the later keeps the draft, sees what changed, and saves on top', async () => {
-    const list = (await maker.get<{ id: number, libraryKey: string }[]>('/api/schedules')).body
-    const id = list.find(each => each.libraryKey === 'oiled-bowl')!.id
-    const open = async (who: Visitor) => {
-      const watched = await openPage(browser, server.origin, { viewport: { width: 834, height: 1100 } }, who)
-      await visit(watched.page, `/schedules/${id}/edit`)
-      return watched.page
-    }
-    const [first, second] = [await open(owner), await open(maker)]
-    await first.getByRole('textbox', { name: 'What it is for' }).fill('For salad.')
-    await first.getByRole('button', { name: 'Save as edition 2' }).click()
-    await first.waitForURL(/\/schedules\/\d+$/)
-    await second.getByRole('textbox', { name: 'Name', exact: true }).fill('Bowl our way')
-    await second.getByRole('button', { name: 'Save as edition 2' }).click()
-    const told = second.getByRole('alert').filter({ hasText: 'Somebody else saved it first' })
-    await told.getByText('What it is for').waitFor()
-    expect(await second.getByRole('textbox', { name: 'Name', exact: true }).inputValue()).toBe('Bowl our way')
-    expect(await axeProblems(second)).toEqual([])
-    await told.getByRole('button', { name: 'Save mine on top of edition 2' }).click()
-    await second.waitForURL(/\/schedules\/\d+$/)
-    await visit(second, `/schedules/${id}/editions`)
-    expect(await second.getByRole('heading', { level: 2 }).allInnerTexts()).toEqual(['Edition 3, the newest', 'Edition 2', 'Edition 1'])
-    expect(await axeProblems(second)).toEqual([])
-  })
-})
-
-describe('a helper', () => {
-  it('reads schedules and their editions, and is offered no change', async () => {
-    const { page } = await openPage(browser, server.origin, {}, helper)
-    await visit(page, '/schedules')
-    expect(await page.getByRole('link', { name: 'New schedule' }).count()).toBe(0)
-    await visit(page, '/schedules/new')
-    await page.getByText('Makers and owners change finishing schedules.').waitFor()
-  })
-})
-
 describe('an empty new schedule', () => {
   it('says what to do, and speaks of what cannot be only once something was entered', async () => {
-    const { page } = await openPage(browser, server.origin, { viewport: { width: 1440, height: 900 } }, maker)
+    const { page } = await openPage(editing.browser, editing.server.origin, { viewport: { width: 1440, height: 900 } }, editing.maker)
     await visit(page, '/schedules/new')
     await page.getByRole('link', { name: '2 things are still to do' }).waitFor()
     await page.getByRole('heading', { name: 'Still to do' }).waitFor()
@@ -284,45 +223,6 @@ describe('an empty new schedule', () => {
     await page.getByRole('textbox', { name: 'Name', exact: true }).fill('Wash boards')
     await page.getByRole('link', { name: '1 thing is still to do' }).waitFor()
     expect(await axeProblems(page)).toEqual([])
-    await page.context().close()
-  })
-})
-
-describe('what was done alike three times', () => {
-  it('is offered on Put on to be kept, looked at, and kept as a schedule', async () => {
-    const { page, problems } = await openPage(browser, server.origin, {}, maker)
-    const { body: rooms } = await owner.get<{ places: { id: number }[] }[]>('/api/rooms')
-    await maker.post('/api/batches', { clientKey: 'offer-batch-1', name: 'Plaques', scheduleId: null, pieces: ['Plaque 1', 'Plaque 2', 'Plaque 3'], placeId: rooms[0]?.places[0]?.id, order: null, startsAt: new Date(Date.now() - 3_600_000).toISOString() })
-    await visit(page, '/put-on')
-    const offer = page.getByRole('heading', { name: 'Keep this as a finishing schedule?' })
-    for (const no of [1, 2, 3]) {
-      expect(await offer.count()).toBe(0)
-      if (no !== 2) await key(page, `Plaque ${no}`).click()
-      await expect.poll(() => key(page, `Plaque ${no}`).getAttribute('aria-pressed')).toBe('true')
-      await page.getByRole('radio', { name: 'Acrylic gesso' }).check()
-      await page.route('**/api/acts', async (route) => {
-        // What is chosen while the first is still being told stays chosen.
-        if (no === 1) await key(page, 'Plaque 2').click()
-        await route.continue()
-      }, { times: 1 })
-      await key(page, 'Acrylic gesso is on').click()
-      // Told, it is chosen no more.
-      await expect.poll(() => key(page, `Plaque ${no}`).getAttribute('aria-pressed')).toBe('false')
-    }
-    await offer.waitFor()
-    expect(await axeProblems(page)).toEqual([])
-    await page.getByText(/What is on Plaque \d was put on alike 3 times, without a schedule/).waitFor()
-    await page.getByRole('link', { name: 'Look at it and keep it' }).click()
-    await page.waitForURL(url => url.pathname === '/schedules/new' && url.searchParams.has('piece'))
-    await expect.poll(() => steps(page).allInnerTexts()).toEqual([expect.stringContaining('Acrylic gesso')])
-    expect(await page.getByRole('textbox', { name: 'Name', exact: true }).inputValue()).toMatch(/Plaques/)
-    await key(page, 'Save').click()
-    await page.waitForURL(url => /^\/schedules\/\d+$/.test(url.pathname))
-    // Kept once, it is not offered again.
-    await visit(page, '/put-on')
-    await key(page, 'Plaque 1').waitFor()
-    expect(await offer.count()).toBe(0)
-    expect(problems).toEqual([])
     await page.context().close()
   })
 })

@@ -80,9 +80,14 @@ describe('when', () => {
     expect(when(text)).toMatchObject({ when: { kind: 'at', at }, unknown: [] })
   })
   // It is past three in the afternoon: an hour without its half of the day is the latest that lies behind.
-  it.each<[string, number]>([['at 2', Date.UTC(2026, 5, 10, 13)], ['at half past two', Date.UTC(2026, 5, 10, 13, 30)], ['at 2:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 12', Date.UTC(2026, 5, 10, 11)], ['at 9', Date.UTC(2026, 5, 10, 8)], ['today at 2', Date.UTC(2026, 5, 10, 13)],
+  it.each<[string, number]>([['at 2', Date.UTC(2026, 5, 10, 13)], ['at half past two', Date.UTC(2026, 5, 10, 13, 30)], ['at 2:20', Date.UTC(2026, 5, 10, 13, 20)], ['at 12', Date.UTC(2026, 5, 10, 11)], ['at 9', Date.UTC(2026, 5, 10, 8)], ['today at 2', Date.UTC(2026, 5, 10, 13)], ['yesterday at 12', Date.UTC(2026, 5, 9, 11)], ['yesterday at 8', Date.UTC(2026, 5, 9, 7)],
     ['at 02:20', Date.UTC(2026, 5, 10, 1, 20)], ['at 2 am', Date.UTC(2026, 5, 10, 1)], ['at 2:20 pm', Date.UTC(2026, 5, 10, 13, 20)], ['at 12 am', Date.UTC(2026, 5, 9, 23)], ['yesterday at 4', Date.UTC(2026, 5, 9, 15)], ['today at 5', Date.UTC(2026, 5, 10, 4)]])('of the half of the day that was meant: "%s"', (text, at) => {
     expect(when(text)).toMatchObject({ when: { kind: 'at', at }, unknown: [] })
+  })
+  it('reads an hour of today as it does without the day', () => {
+    const evening = { now: Date.UTC(2026, 5, 10, 20), zone }
+    const said = (text: string) => readSentence(`varnish on ledger 1 ${text}`, vocabulary, evening, 'metric')
+    for (const text of ['today at 8', 'at 8']) expect(said(text)).toMatchObject({ when: { kind: 'at', at: Date.UTC(2026, 5, 10, 19) } })
   })
   // A coat of last night told as one of now would be ready a night late, and its window shut.
   it.each([['yesterday', '2026-06-09'], ['yesterday evening', '2026-06-09'], ['last night', '2026-06-09'], ['this morning', '2026-06-10'], ['on Monday', '2026-06-08'], ['last Friday evening', '2026-06-05'], ['today', '2026-06-10'], ['this evening at 11', '2026-06-10']])('asks for the hour of "%s"', (text, day) => {

@@ -1,11 +1,14 @@
 import { eq } from 'drizzle-orm'
 import ICAL from 'ical.js'
 import { describe, expect, it } from 'vitest'
-import { pieceStep, planEntry, planMate } from '~~/db/schema'
+import { closure, memberStepKind, pieceStep, planEntry, planMate } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
+import { searchHere } from '~~/server/planning/search'
 import { calendarOf, makeCalendarLink } from '~~/server/services/calendar'
+import { checkPin, pinTurns } from '~~/server/services/pins'
 import { planState } from '~~/server/services/plan-state'
 import { plannedStudio } from '../../helpers/planned-studio'
+import { minute } from '../../helpers/studio'
 
 // A Tuesday.
 const now = Date.parse('2026-04-07T10:00:00Z')
@@ -30,6 +33,26 @@ describe('work that takes two people at once', () => {
     const before = blocks()
     expect(await replan(db, studioId, now, atOnce)).toMatchObject({ ok: true })
     expect(blocks()).toEqual(before)
+  })
+
+  it('keeps its second person when it is pinned, though others might do it too', async () => {
+    const studio = plannedStudio(now, 'painted-waxed-box', 1)
+    const { db, studioId, members } = studio
+    db.update(pieceStep).set({ hands: 2 }).where(eq(pieceStep.key, 'lid-1')).run()
+    for (const kind of ['coat', 'bench work'] as const) db.insert(memberStepKind).values({ studioId, memberId: members.helper.id, kind }).run()
+    db.insert(closure).values({ studioId, memberId: members.owner.id, name: 'Away', fromDate: '2026-04-07', toDate: '2026-04-20' }).run()
+    expect(await replan(db, studioId, now, atOnce)).toMatchObject({ ok: true })
+    const block = () => (planState(db, studioId, now)?.people ?? []).flatMap(person => person.blocks.filter(each => each.step.startsWith('First paint on the lid top')).map(each => ({ of: person.memberId, ...each })))
+    const both = [members.maker.id, members.helper.id].sort((a, b) => a - b)
+    expect(block().map(each => each.of)).toEqual(both)
+    // The owner is back and stands first in every list.
+    db.delete(closure).run()
+    const [first] = block()
+    const at = (first?.workAt ?? 0) + 15 * minute
+    const body = { turnIds: first?.turnIds ?? [], startsAt: new Date(at).toISOString(), memberId: members.maker.id }
+    expect(await pinTurns(db, studioId, members.maker.id, body, now, () => checkPin(db, studioId, body, now, searchHere))).toEqual({ ok: true })
+    expect(await replan(db, studioId, now, atOnce)).toMatchObject({ ok: true })
+    expect(block().map(each => [each.of, each.workAt])).toEqual(both.map(id => [id, at]))
   })
 
   it('stands in the calendar of both', async () => {
