@@ -167,6 +167,12 @@ describe('on a phone', () => {
       await page.context().close()
     }
   })
+  it('the ways stand in one row on a tablet, whichever is the current one', async () => {
+    const page = await at('/schedules', { viewport: { width: 834, height: 1112 } })
+    const tops = await page.locator('header nav a').evaluateAll(ways => new Set(ways.map(way => way.getBoundingClientRect().top)).size)
+    expect(tops).toBe(1)
+    await page.context().close()
+  })
   it.each(['light', 'dark'] as const)('what is chosen stands out in the reader’s own colours in the %s scheme', async (colorScheme) => {
     const page = await at('/air', { viewport: { width: 1280, height: 844 }, forcedColors: 'active', colorScheme })
     const ground = (name: string) => page.locator(`label:has(input[aria-label="${name}"])`).evaluate(key => getComputedStyle(key).backgroundColor)
