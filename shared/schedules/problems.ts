@@ -84,13 +84,31 @@ function linkProblems(draft: ScheduleDraft, link: DraftLink, sheets: Sheets): Sc
   ]
 }
 
-/** Two steps on one face with nothing to say which comes first. */
+/**
+ * Waits that are missing between steps on one face, each once: a wait that would also put others in order, which come before and after it, is said of
+ * the two steps it belongs between, and `steps` names those others in the order of the list.
+ */
 function orderProblems({ steps, links, parts }: ScheduleDraft): ScheduleProblem[] {
   const after = new Map(steps.map(step => [step.key, stepsAfter(links, step.key)]))
-  return steps.flatMap((a, at) => steps.slice(at + 1).flatMap((b) => {
-    const told = after.get(a.key)?.has(b.key) || after.get(b.key)?.has(a.key)
-    return !told && meet(a, b, parts) ? [refused('no order', { step: b.key, other: a.key })] : []
-  }))
+  const follows = (a: string, b: string) => after.get(a)?.has(b) ?? false
+  const open = steps.flatMap((a, at) => steps.slice(at + 1).filter(b => !follows(a.key, b.key) && !follows(b.key, a.key) && meet(a, b, parts)).map(b => ({ a: a.key, b: b.key })))
+  const within = (wide: typeof open[number], near: typeof open[number]) => wide !== near && (wide.a === near.a || follows(wide.a, near.a)) && (wide.b === near.b || follows(near.b, wide.b))
+  return open.filter(near => !open.some(other => within(near, other))).map((near) => {
+    const touched = new Set(open.filter(wide => within(wide, near)).flatMap(({ a, b }) => [a, b]))
+    return refused('no order', { step: near.b, other: near.a, steps: steps.map(step => step.key).filter(key => touched.has(key) && key !== near.a && key !== near.b) })
+  })
+}
+
+/** Steps that hang together with nothing of the rest, each heap of them once, where no missing wait already said would tie them. */
+function apartProblems({ steps, links }: ScheduleDraft, order: readonly ScheduleProblem[]): ScheduleProblem[] {
+  const tied = [...links, ...order.flatMap(({ step, other }) => (step !== null && other !== null ? [{ from: other, to: step }] : []))]
+  const seen = connectedTo(steps[0]?.key, tied)
+  return steps.flatMap(({ key }) => {
+    if (seen.has(key)) return []
+    const heap = connectedTo(key, tied)
+    for (const each of heap) seen.add(each)
+    return [refused('apart', { step: key, steps: steps.map(each => each.key).filter(each => heap.has(each)) })]
+  })
 }
 
 /**
@@ -99,7 +117,7 @@ function orderProblems({ steps, links, parts }: ScheduleDraft): ScheduleProblem[
  */
 export function draftProblems(draft: ScheduleDraft, sheets: Sheets): ScheduleProblem[] {
   const circle = circleOf(draft.steps.map(step => step.key), draft.links)
-  const together = connectedTo(draft.steps[0]?.key, draft.links)
+  const order = orderProblems(draft)
   return [
     ...draft.name === '' ? [refused('no name')] : [],
     ...draft.steps.length === 0 ? [refused('no step')] : [],
@@ -108,8 +126,8 @@ export function draftProblems(draft: ScheduleDraft, sheets: Sheets): SchedulePro
     ...twice(draft.links.map(link => `${link.from} ${link.to}`)).map(pair => refused('wait twice', { step: pair.split(' ')[1] ?? null, other: pair.split(' ')[0] ?? null })),
     ...draft.links.flatMap(link => linkProblems(draft, link, sheets)),
     ...circle === null ? [] : [refused('circle', { step: circle[0] ?? null, steps: circle })],
-    ...draft.steps.filter(step => !together.has(step.key)).map(step => refused('apart', { step: step.key })),
-    ...orderProblems(draft),
+    ...apartProblems(draft, order),
+    ...order,
   ]
 }
 

@@ -1,11 +1,12 @@
 import type { ScheduleDraft } from '#shared/schemas/schedule-draft'
 import type { ScheduleProblem, ScheduleProblemCode } from '#shared/schedules/problems'
 import { milestoneNames } from '#shared/terms'
+import { listText } from '#shared/words/group'
 import { waitSpan } from '#shared/words/schedules'
 import { openSpan } from '#shared/words/advice-start'
 import { milestoneText, titled } from '#shared/words/steps'
 
-interface Said { step: string, other: string, what: string, minutes: number, steps: string }
+interface Said { step: string, other: string, what: string, minutes: number, steps: readonly string[] }
 
 const rung = (what: string) => {
   const name = milestoneNames.find(each => each === what)
@@ -42,9 +43,9 @@ const sentences: Record<ScheduleProblemCode, (said: Said) => string> = {
   'no window': ({ step, other, what }) => `${step} waits for a window after ${other}, but ${what} has none.`,
   'window shuts first': ({ step, other, minutes, what }) => `${step} comes too late: the window after ${other} shuts after ${waitSpan(minutes)}, before ${what === '' ? 'it may begin' : `its wait of ${waitSpan(Number(what))} and the work between are over`}.`,
   'recovery unnamed': ({ step, other }) => `What a missed window asks for between ${other} and ${step} has no name.`,
-  'circle': ({ steps }) => `These wait for each other in a circle: ${steps}.`,
-  'apart': ({ step }) => `${step} leads nowhere: nothing waits for it and it waits for nothing of the rest.`,
-  'no order': ({ step, other }) => `${other} and ${step} are on the same face, and nothing says which comes first.`,
+  'circle': ({ steps }) => `These wait for each other in a circle: ${steps.join(', ')}.`,
+  'apart': ({ step, steps }) => steps.length > 1 ? `${listText(steps)} lead nowhere: nothing of the rest waits for them and they wait for nothing of it.` : `${step} leads nowhere: nothing waits for it and it waits for nothing of the rest.`,
+  'no order': ({ step, other, steps }) => `${other} and ${step} are on the same face, and nothing says which comes first.${steps.length > 0 ? ` It touches ${listText(steps)} too.` : ''}`,
   'never over': ({ step, other, what }) => `${step} cannot lie on ${other}. ${what}`,
   'too soon over': ({ step, other, minutes, what }) => `${step} follows ${other} sooner than ${waitSpan(minutes)}. ${what}`,
   'no end': ({ step, other, what }) => `${step} waits until ${other} is ${rung(what)}, which has no end in sight in the studio’s usual air.`,
@@ -56,6 +57,6 @@ const sentences: Record<ScheduleProblemCode, (said: Said) => string> = {
 /** What is wrong, with the step named: “Second coat” lays nothing. Choose its material. */
 export function problemText(problem: ScheduleProblem, draft: Pick<ScheduleDraft, 'steps'>): string {
   const nameOf = (key: string | null) => titled(draft.steps.find(step => step.key === key)?.name ?? '')
-  const says = sentences[problem.code]({ step: nameOf(problem.step), other: nameOf(problem.other), what: problem.what ?? '', minutes: problem.minutes ?? 0, steps: problem.steps.map(nameOf).join(', ') })
+  const says = sentences[problem.code]({ step: nameOf(problem.step), other: nameOf(problem.other), what: problem.what ?? '', minutes: problem.minutes ?? 0, steps: problem.steps.map(nameOf) })
   return says.charAt(0).toUpperCase() + says.slice(1)
 }

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { librarySchedules } from '#shared/library/index'
 import { scheduleProblems } from '#shared/schedules/problems'
 import { reckonSchedule } from '#shared/schedules/reckon'
-import { changeStep, setLink } from '#shared/schedules/edit'
+import { changeStep, removeLink, setLink } from '#shared/schedules/edit'
 import { addPart } from '#shared/schedules/parts'
 import type { ScheduleDraft } from '#shared/schemas/schedule-draft'
 import { problemText } from '#shared/words/schedule-problems'
@@ -32,6 +32,24 @@ describe('what cannot be in a draft', () => {
     const draft = addPart(two('acrylic-gesso', 'acrylic-gesso'), { name: 'Knob', meetsAt: null }, sheets)
     const loose = { ...draft, steps: [...draft.steps, { ...draft.steps[1]!, key: 'c', name: 'C', targets: on('knob') }] }
     expect(found(loose)).toEqual(['refused: “C” leads nowhere: nothing waits for it and it waits for nothing of the rest.'])
+  })
+
+  it('says one missing wait once, with all that it touches', () => {
+    const draft = panelWith(...['a', 'b', 'c', 'd', 'e'].map(key => ({ key, name: key.toUpperCase(), kind: 'coat' as const, with: 'acrylic-gesso', targets: on('panel') })))
+    const order = (given: ScheduleDraft) => found(given).filter(text => /first|nowhere/.test(text))
+    expect(order(draft)).toEqual([])
+    expect(order(removeLink(draft, 'b', 'c'))).toEqual(['refused: “B” and “C” are on the same face, and nothing says which comes first. It touches “A”, “D” and “E” too.'])
+    // A step that lost both its waits wants both again.
+    expect(order(setLink(removeLink(removeLink(draft, 'b', 'c'), 'c', 'd'), link('b', 'd')))).toEqual([
+      'refused: “B” and “C” are on the same face, and nothing says which comes first. It touches “A” too.',
+      'refused: “C” and “D” are on the same face, and nothing says which comes first. It touches “E” too.',
+    ])
+  })
+
+  it('names a branch of several steps that never meets the rest once', () => {
+    const draft = addPart(two('acrylic-gesso', 'acrylic-gesso'), { name: 'Knob', meetsAt: null }, sheets)
+    const knob = ['c', 'd'].map(key => ({ ...draft.steps[1]!, key, name: key.toUpperCase(), targets: on('knob') }))
+    expect(found({ ...draft, steps: [...draft.steps, ...knob], links: [...draft.links, link('c', 'd')] })).toEqual(['refused: “C” and “D” lead nowhere: nothing of the rest waits for them and they wait for nothing of it.'])
   })
 
   it('names a window that shuts before its wait is over, by what holds the step up itself', () => {
