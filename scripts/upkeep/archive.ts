@@ -31,6 +31,17 @@ function fault(file: string): string | null {
   }
 }
 
+/** Makes one plain file of a copied database, with no log beside it, so that the copy is whole wherever that file is carried. */
+function standAlone(file: string): void {
+  const client = new Sqlite(file)
+  try {
+    client.pragma('journal_mode = DELETE')
+  }
+  finally {
+    client.close()
+  }
+}
+
 /**
  * Copies database and storage into a new folder inside `folder`. The database is copied by SQLite itself, page by page in one piece, so a
  * server may go on writing meanwhile. A copy that cannot be read back is refused, and taken away.
@@ -49,6 +60,7 @@ export async function makeArchive({ databaseFile, storageFolder }: Places, folde
   finally {
     client.close()
   }
+  standAlone(join(target, databaseName))
   const wrong = fault(join(target, databaseName))
   if (wrong) {
     rmSync(target, { recursive: true })

@@ -45,6 +45,16 @@ describe('a backup', () => {
     expect(readFileSync(join(places.storageFolder, 'sheet.pdf'), 'utf8')).toBe('a data sheet')
   })
 
+  it('is one file that stands alone, before and after it was put back', async () => {
+    const open = addStudio('Fir Lane')
+    const made = await makeArchive(places, join(folder, 'kept'), now)
+    open.$client.close()
+    expect(readdirSync(made).sort()).toEqual(['stillwet.db', 'storage'])
+    putBack(places, made, now)
+    expect(names()).toEqual(['Fir Lane'])
+    expect(readdirSync(made).sort()).toEqual(['stillwet.db', 'storage'])
+  })
+
   it('is refused where there is nothing to copy, or one of that second is there', async () => {
     await makeArchive(places, folder, now)
     await expect(makeArchive(places, folder, now)).rejects.toThrow(/is there already/)
