@@ -3,7 +3,7 @@ import { linkBetween, mendedLink } from '#shared/schedules/link'
 import type { Sheets } from '#shared/schedules/link'
 import { meet, stepsAfter, surfacesOf } from '#shared/schedules/graph'
 import type { DraftLink, DraftStep, ScheduleDraft } from '#shared/schemas/schedule-draft'
-import { leavesFilm } from '#shared/step-kinds'
+import { leavesFilm, usualDust } from '#shared/step-kinds'
 import { nameApart, stepNameOf } from '#shared/words/schedule-names'
 import type { StepKind } from '#shared/terms'
 
@@ -34,7 +34,7 @@ export function freshStep(draft: ScheduleDraft, given: Pick<DraftStep, 'kind' | 
   const glues = kind === 'glue-up'
   const step: DraftStep = {
     key: '', name, coatSize: 'normal', ground: 'primed', hold: glues ? 'clamps' : null, placeKind: glues ? 'clamps' : null, perDay: 1, days: 1, untilEnough: false,
-    hands: 1, dust: kind === 'light sanding' ? 'some' : kind === 'flat sanding' ? 'much' : 'none', mayRunOver: false, checks: [], ...minutes, ...given,
+    hands: 1, dust: usualDust[kind], mayRunOver: false, checks: [], ...minutes, ...given,
   }
   return { ...step, targets: fittingTargets(step), key: given.key ?? freeKey(step.name, draft.steps.map(each => each.key)) }
 }
@@ -152,7 +152,7 @@ export function changeStep(draft: ScheduleDraft, key: string, patch: Partial<Dra
   }) }
 }
 
-/** What follows from a new kind or material: the name while nobody has given one, the hold, the faces of a glue-up. */
+/** What follows from a new kind or material: the name while nobody has given one, the hold, the dust while it is the usual one, the faces of a glue-up. */
 function refitted(old: DraftStep, wanted: DraftStep, draft: ScheduleDraft, sheets: Sheets): DraftStep {
   const lays = leavesFilm(wanted.kind)
   const step = { ...wanted, materialId: lays ? wanted.materialId : null }
@@ -161,6 +161,7 @@ function refitted(old: DraftStep, wanted: DraftStep, draft: ScheduleDraft, sheet
   const called = (each: DraftStep) => stepNameOf(each.kind, sheets.get(each.materialId ?? 0)?.name ?? null)
   const unnamed = old.name === '' || old.name.startsWith(called(old))
   if (unnamed && wanted.name === old.name) step.name = nameApart(called(step), others.map(each => each.name))
+  if (old.dust === usualDust[old.kind] && wanted.dust === old.dust) step.dust = usualDust[step.kind]
   if (step.kind !== old.kind) Object.assign(step, step.kind === 'glue-up' ? { hold: 'clamps', placeKind: 'clamps', releaseMin: Math.max(2, step.releaseMin) } : { hold: null, releaseMin: 0, placeKind: old.kind === 'glue-up' ? null : step.placeKind })
   return { ...step, targets: fittingTargets(step) }
 }

@@ -1,4 +1,4 @@
-import { leavesFilm } from '#shared/step-kinds'
+import { leavesFilm, usualDust } from '#shared/step-kinds'
 import { cannotBe, insertedStep, linksFrom, sandable, stepNamed } from '#shared/work/draft'
 import type { Draft } from '#shared/work/draft'
 import type { Step, WorkAct } from '#shared/work/types'
@@ -17,7 +17,7 @@ export function droppedOut(draft: Draft, act: WorkAct) {
   if (!from) return cannotBe(draft, act, 'no such step')
   const common = { origin: 'branch' as const, insertedByActId: act.rootId, targets: from.targets }
   const fill = insertedStep({ ...common, key: `fill ${act.rootId}`, ordinal: from.ordinal + 0.3, name: 'Drop-fill the run', kind: 'coat', pieceMin: fillMinutes, materialVersionId: from.materialVersionId, coatSize: 'full', ground: 'sealed' })
-  const level = insertedStep({ ...common, key: `level ${act.rootId}`, ordinal: from.ordinal + 0.6, name: 'Level the run', kind: 'levelling', pieceMin: levelMinutes, dust: 'some' })
+  const level = insertedStep({ ...common, key: `level ${act.rootId}`, ordinal: from.ordinal + 0.6, name: 'Level the run', kind: 'levelling', pieceMin: levelMinutes, dust: usualDust.levelling })
   draft.steps.push(fill, level)
   for (const link of linksFrom(draft, from.key)) {
     draft.links.push({ from: level.key, to: link.to, milestone: null, risk: 'p90', windowed: false })
@@ -49,7 +49,7 @@ export function windowMissed(draft: Draft, act: WorkAct) {
   if (!from || !to || (from.key !== to.key && !link)) return cannotBe(draft, act, 'no such step')
   const name = typeof act.body.recovery === 'string' ? act.body.recovery : 'Scuff the surface'
   const minutes = typeof act.body.minutes === 'number' ? act.body.minutes : 10
-  const recovery = insertedStep({ key: `recovery ${act.rootId}`, ordinal: to.ordinal - 0.5, name, kind: 'light sanding', origin: 'recovery', insertedByActId: act.rootId, pieceMin: minutes, targets: to.targets, dust: 'some' })
+  const recovery = insertedStep({ key: `recovery ${act.rootId}`, ordinal: to.ordinal - 0.5, name, kind: 'light sanding', origin: 'recovery', insertedByActId: act.rootId, pieceMin: minutes, targets: to.targets, dust: usualDust['light sanding'] })
   draft.steps.push(recovery)
   draft.links.push({ from: recovery.key, to: to.key, milestone: null, risk: 'p90', windowed: false })
   if (from.key !== to.key) draft.links.push({ from: from.key, to: recovery.key, milestone: 'dry-to-sand-lightly', risk: 'p90', windowed: false })

@@ -1,3 +1,4 @@
+import { usualDust } from '#shared/step-kinds'
 import type { MilestoneName, Risk } from '#shared/terms'
 import type { LibraryCheck, LibraryLink, LibraryPart, LibraryStep, LibraryTarget } from '#shared/library/types'
 
@@ -22,7 +23,7 @@ function step(kind: LibraryStep['kind'], key: string, name: string, minutes: Min
   const [setupMin, pieceMin, cleanMin = 0, releaseMin = 0] = minutes
   return {
     key, name, kind, coatSize: 'normal', ground: 'primed', perDay: 1, days: 1, untilEnough: false,
-    setupMin, pieceMin, cleanMin, releaseMin, hands: 1, dust: 'none', mayRunOver: false, targets: targets(on), checks: [], ...extra,
+    setupMin, pieceMin, cleanMin, releaseMin, hands: 1, dust: usualDust[kind], mayRunOver: false, targets: targets(on), checks: [], ...extra,
   }
 }
 
@@ -32,12 +33,11 @@ export const coat = (key: string, name: string, material: string, minutes: Minut
 export const glueUp = (key: string, name: string, material: string, minutes: Minutes, on: string, extra: Extra = {}): LibraryStep =>
   ({ ...step('glue-up', key, name, minutes, on, extra), material })
 
-/** Light sanding makes some dust unless it is done wet. */
 export const lightSanding = (key: string, name: string, minutes: Minutes, on: string, extra: Extra = {}): LibraryStep =>
-  step('light sanding', key, name, minutes, on, { dust: 'some', ...extra })
+  step('light sanding', key, name, minutes, on, extra)
 
 export const flatSanding = (key: string, name: string, minutes: Minutes, on: string, extra: Extra = {}): LibraryStep =>
-  step('flat sanding', key, name, minutes, on, { dust: 'much', ...extra })
+  step('flat sanding', key, name, minutes, on, extra)
 
 export const levelling = (key: string, name: string, minutes: Minutes, on: string, extra: Extra = {}): LibraryStep =>
   step('levelling', key, name, minutes, on, extra)

@@ -23,7 +23,7 @@ export const lacqueredInstrument: LibrarySchedule = {
     lightSanding('scuff-2', 'Scuff, second time', [5, 15, 10], body),
     coat('round-3', 'Third round of lacquer', 'nitrocellulose-lacquer', [20, 8, 20], body, { ...sprayed, perDay: 2 }),
     coat('flow', 'Thinned flow coat', 'nitrocellulose-lacquer', [20, 8, 20], body, { ...sprayed, coatSize: 'thin' }),
-    levelling('level', 'Level wet by fine grades', [10, 120, 15], body, { mayRunOver: true }),
+    levelling('level', 'Level wet by fine grades', [10, 120, 15], body, { dust: 'none', mayRunOver: true }),
     benchWork('buff', 'Buff', [10, 60, 15], body, { dust: 'some' }),
     flatSanding('sand-neck', 'Sand the neck', [5, 30, 10], 'neck.back'),
     coat('oil-neck', 'Oil the neck', 'tung-oil', [5, 8, 5], 'neck.back', { coatSize: 'thin', ground: 'porous', placeKind: 'hook', checks: [look('Wipe off what is left on top', 20, 3)] }),

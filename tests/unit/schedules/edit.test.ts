@@ -96,6 +96,19 @@ describe('a step changed', () => {
   })
 })
 
+describe('the dust of a step', () => {
+  it('is the usual one of its kind, as what a mishap puts in says too', () => {
+    const made = (kind: 'light sanding' | 'flat sanding' | 'levelling' | 'coat') => freshStep(gessoed(), { kind, materialId: null, targets: on('panel') }, sheets).dust
+    expect([made('light sanding'), made('flat sanding'), made('levelling'), made('coat')]).toEqual(['some', 'much', 'some', 'none'])
+  })
+
+  it('goes with a new kind while nobody has said another', () => {
+    const kinds = (draft: ReturnType<typeof gessoed>) => changeStep(draft, 'two', { kind: 'levelling' }, sheets).steps[2]?.dust
+    expect(kinds(gessoed())).toBe('some')
+    expect(kinds(changeStep(gessoed(), 'two', { dust: 'much' }, sheets))).toBe('much')
+  })
+})
+
 describe('parts and faces', () => {
   it('meet where a step joins them: a new part with its meeting step has a branch of its own', () => {
     const draft = panelWith({ key: 'a', kind: 'coat', with: 'acrylic-gesso', targets: on('panel') }, { key: 'fit', kind: 'bench work', targets: on('panel') })
