@@ -12,6 +12,14 @@ export function liesBehind({ kind, doneAt }: { kind: string, doneAt: number }, n
   return kind !== 'began' || now - doneAt > beganLateMs
 }
 
+/** What is true of solvent work when it is told of: it begins, it began some time ago, or its film is on already. */
+export type VapourPhase = 'begins' | 'began' | 'film on'
+
+/** The phase of solvent work that began or was done at `doneAt`, when it was told at `toldAt`, ms UTC. */
+export function vapourPhase({ kind, doneAt }: { kind: string, doneAt: number }, toldAt: number): VapourPhase {
+  return kind !== 'began' ? 'film on' : liesBehind({ kind, doneAt }, toldAt) ? 'began' : 'begins'
+}
+
 /** Whether a film still gives off solvent to speak of: until it is dry to handle at 98 %, and for as long as nobody can say when that is. */
 export function isWetSolvent(film: FilmState, now: number): boolean {
   if (!film.solventBorne) return false

@@ -1,7 +1,9 @@
-import { and, desc, inArray, isNull, sql } from 'drizzle-orm'
+import { desc, inArray, isNull, sql } from 'drizzle-orm'
+import type { SQL } from 'drizzle-orm'
 import { materialFigure, milestone, vapourLimit, vapourStart } from '~~/db/schema'
 import type { Database, Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
+import { startToldForMs } from '#shared/solvent-rooms'
 import { coatKinds } from '#shared/terms'
 import type { SheetFigures, Span } from '#shared/vapour/facts'
 import type { NamedCoat } from '#shared/vapour/picture'
@@ -84,8 +86,18 @@ export function plannedCoats(db: Reader, studioId: number, now: number, hours: n
 export type StartRow = typeof vapourStart.$inferSelect
 
 /** The newest start of solvent work in each room that nobody has ended. */
-export function openStarts(db: Reader, studioId: number): Map<number, StartRow> {
-  const rows = db.select().from(vapourStart).where(and(scoped(vapourStart, studioId), isNull(vapourStart.endedAt))).orderBy(desc(vapourStart.at), desc(vapourStart.id)).all()
+export const openStarts = (db: Reader, studioId: number) => newestStarts(db, studioId, isNull(vapourStart.endedAt))
+
+/** Whether everybody is still told of a start at `now`, ms UTC: it is of late, and nobody has opened its room since. That its one coat is on, which ends it, changes nothing about that. */
+export function stillTold(now: number): SQL {
+  return sql`${vapourStart.at} > ${now - startToldForMs} and not exists (select 1 from keep_out where keep_out.room_id = ${vapourStart.roomId} and keep_out.opened_at >= ${vapourStart.at})`
+}
+
+/** The newest start in each room that goes on or that everybody is told of. */
+export const shownStarts = (db: Reader, studioId: number, now: number) => newestStarts(db, studioId, sql`(${vapourStart.endedAt} is null or (${stillTold(now)}))`)
+
+function newestStarts(db: Reader, studioId: number, which: SQL): Map<number, StartRow> {
+  const rows = db.select().from(vapourStart).where(scoped(vapourStart, studioId, which)).orderBy(desc(vapourStart.at), desc(vapourStart.id)).all()
   const newest = new Map<number, StartRow>()
   for (const row of rows) if (!newest.has(row.roomId)) newest.set(row.roomId, row)
   return newest

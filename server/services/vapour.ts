@@ -5,7 +5,7 @@ import { reshutMs } from '~~/server/services/keep-outs'
 import { memberNames } from '~~/server/services/member-names'
 import { hiddenFrom } from '~~/server/services/private-materials'
 import type { Membership } from '~~/server/services/sessions'
-import { exhaustRuns, openStarts } from '~~/server/services/vapour-facts'
+import { exhaustRuns, shownStarts } from '~~/server/services/vapour-facts'
 import type { StartRow } from '~~/server/services/vapour-facts'
 import { readPlanned, readVapour, sumsOf } from '~~/server/services/vapour-rooms'
 import type { VapourNow } from '~~/server/services/vapour-rooms'
@@ -25,7 +25,7 @@ export function vapourState(db: Database, studioId: number, who: Membership, now
   const read = readVapour(db, studioId, now)
   const planned = readPlanned(db, studioId, now)
   const names = memberNames(db, studioId)
-  const starts = startStates(db, studioId, openStarts(db, studioId), names)
+  const starts = startStates(db, studioId, shownStarts(db, studioId, now), names)
   const lines = keepOuts(db, studioId, now)
   const hidden = hiddenFrom(db, studioId, may(who.role, 'see private mixes'))
   return {

@@ -1,5 +1,6 @@
 import { cautionParts } from '#shared/library/caution-parts'
 import { cautionDeferral } from '#shared/library/cautions'
+import type { VapourPhase } from '#shared/solvent-rooms'
 import { ragAnswersListed, ragAnswerTexts } from '#shared/words/rags'
 import { asSentence } from '#shared/words/verdict'
 
@@ -50,8 +51,8 @@ export const callWords = {
     again: (room: string, last: string) => `Nobody has answered yet. ${callWords.rags.body(room, last)}`,
   },
   vapour: {
-    title: (room: string) => `Keep out of ${room}: solvent work begins`,
-    body: (room: string, name: string | null, exhaust: boolean) => `${name ?? 'The bench'} begins solvent work in ${room}. ${exhaust ? 'The exhaust is running.' : cautionParts.spreads} ${noIgnition} ${cautionParts.phonesOut} ${cautionDeferral}`,
+    title: (room: string, phase: VapourPhase) => `Keep out of ${room}: ${({ 'begins': 'solvent work begins', 'began': 'solvent work has begun', 'film on': 'a solvent film is on' })[phase]}`,
+    body: (room: string, name: string | null, exhaust: boolean, phase: VapourPhase) => `${name ?? 'The bench'} ${({ 'begins': 'begins solvent work', 'began': 'began solvent work some time ago', 'film on': 'has put a solvent film on' })[phase]} in ${room}. ${!exhaust ? cautionParts.spreads : phase === 'begins' ? 'The exhaust is running.' : 'The exhaust was said to run.'} ${noIgnition} ${cautionParts.phonesOut} ${cautionDeferral}`,
     stays: 'This call stays till the room has been opened. Say that you have seen it instead.',
   },
   checkRoom: {

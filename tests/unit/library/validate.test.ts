@@ -35,7 +35,7 @@ describe('what is wrong with a schedule', () => {
   it('names steps that wait for each other, steps apart and steps in no order', () => {
     expect(problems({ links: [...plain.links, done('d', 'a')] })).toContain('These wait for each other in a circle: “A”, “B”, “C”, “D”.')
     expect(problems({ links: [done('a', 'b'), done('c', 'd')] })).toEqual(['“B” and “C” are on the same face, and nothing says which comes first. It touches “A” and “D” too.'])
-    expect(problems({ links: [done('a', 'b'), done('a', 'c'), done('c', 'd')] })).toContain('“B” and “C” are on the same face, and nothing says which comes first.')
+    expect(problems({ links: [done('a', 'b'), done('a', 'c'), done('c', 'd')] })).toEqual(['“B” and “C” are on the same face, and nothing says which comes first. It touches “D” too.'])
     expect(problems({ links: [done('a', 'z')] })).toContain('A wait names a step that is not there: z.')
   })
 

@@ -19,10 +19,10 @@ const running: VapourAnswers = { exhaust: 'running', flamesOff: true, nobodyElse
 const none: VapourAnswers = { ...running, exhaust: 'none' }
 
 /** Four boards in a booth or on a shelf, and a way to tell acts about one of them. */
-function studioWith(place: 'booth' | 'shelf', oldObject = false) {
+function studioWith(place: 'booth' | 'shelf', oldObject = false, schedule: string | null = null) {
   const studio = testStudio(now)
   const { db, studioId, members } = studio
-  const started = startBatch(db, studioId, { member: members.maker }, { clientKey: 'start-one', name: 'Boards', scheduleId: null, pieces: ['Board 1', 'Board 2', 'Board 3', 'Board 4'], sizeUnits: 1, placeId: studio.places[place], order: null, startsAt: iso(now - hour), oldObject }, now)
+  const started = startBatch(db, studioId, { member: members.maker }, { clientKey: 'start-one', name: 'Boards', scheduleId: schedule === null ? null : studio.scheduleOf(schedule), pieces: ['Board 1', 'Board 2', 'Board 3', 'Board 4'], sizeUnits: 1, placeId: studio.places[place], order: null, startsAt: iso(now - hour), oldObject }, now)
   if (!started.ok) throw new Error(started.message)
   let keys = 0
   const tell = (kind: ActRequest['kind'], no: number, body: ActRequest['body'], given: { vapour?: VapourAnswers, at?: number, doneAt?: number, by?: Teller } = {}) => {
@@ -153,10 +153,38 @@ describe('the call about solvent work', () => {
     const { lacquer, db, studioId, members, rooms } = studioWith('booth')
     lacquer(1, { vapour: running })
     const calls = wantedReminders(db, studioId, now).filter(call => call.kind === 'vapour')
-    expect(calls).toMatchObject([{ dueAt: now, title: 'Keep out of Spray room: solvent work begins' }])
-    expect(calls[0]?.body).toContain('The maker begins solvent work in Spray room. The exhaust is running.')
+    expect(calls).toMatchObject([{ dueAt: now, title: 'Keep out of Spray room: a solvent film is on' }])
+    expect(calls[0]?.body).toContain('The maker has put a solvent film on in Spray room. The exhaust was said to run.')
     openRoom(db, studioId, members.maker, rooms.spray, now + minute)
     expect(wantedReminders(db, studioId, now + minute).filter(call => call.kind === 'vapour')).toEqual([])
+  })
+
+  it('says that work begins only when it does, and goes on saying it', () => {
+    const told = (doneAt: number, at: number) => {
+      const { tell, db, studioId } = studioWith('booth', false, 'lacquered-instrument')
+      expect(tell('work done', 1, { step: 'sand-body' }, { doneAt: now - 40 * minute })).toMatchObject({ ok: true })
+      expect(tell('began', 1, { step: 'seal' }, { vapour: running, doneAt })).toMatchObject({ ok: true })
+      return wantedReminders(db, studioId, at).filter(call => call.kind === 'vapour').map(({ title, body }) => `${title}. ${body}`)[0]
+    }
+    const begins = /^Keep out of Spray room: solvent work begins. The maker begins solvent work in Spray room. The exhaust is running./
+    expect(told(now, now)).toMatch(begins)
+    expect(told(now, now + hour)).toMatch(begins)
+    // Told later than a quarter of an hour after it.
+    expect(told(now - 16 * minute, now)).toMatch(/^Keep out of Spray room: solvent work has begun. The maker began solvent work some time ago in Spray room. The exhaust was said to run./)
+  })
+
+  it('is listed on the page that it leads to, also where its one coat without an exhaust is on and ended it', () => {
+    const { lacquer, db, studioId, members, rooms } = studioWith('booth')
+    const listed = (at: number) => vapourState(db, studioId, members.owner, at).rooms.flatMap(each => (each.start === null ? [] : [each.start.id]))
+    const called = (at: number) => wantedReminders(db, studioId, at).filter(call => call.kind === 'vapour').map(call => call.path)
+    lacquer(1, { vapour: none, doneAt: now - 30 * minute })
+    expect(listed(now)).toHaveLength(1)
+    expect(called(now)).toEqual([`/safety?start=${listed(now)[0]}`])
+    expect(vapourState(db, studioId, members.owner, now).rooms.find(each => each.roomId === rooms.spray)?.exhaustRuns).toBe(false)
+    // It is told of for two hours, and so long it is listed, unless the room is opened.
+    expect([...called(now + 2 * hour), ...listed(now + 2 * hour)]).toEqual([])
+    openRoom(db, studioId, members.maker, rooms.spray, now + minute)
+    expect([...called(now + minute), ...listed(now + minute)]).toEqual([])
   })
 
   it('says when it is time to look, no sooner than the film is touch-dry, and only where that can be told', () => {
