@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { check, integer, real, sqliteTable, text } from 'drizzle-orm/sqlite-core'
 import { promiseCauses } from '#shared/terms'
+import type { MovedTurn } from '#shared/plan-moves'
 import type { PromiseCause } from '#shared/terms'
 import { flag, instant, within } from './columns'
 import { batch, order, promise } from './pieces'
@@ -21,7 +22,8 @@ export const promiseBasis = sqliteTable('promise_basis', {
 
 /**
  * How a promised date stands by the newest plan. `slips` counts how often it has begun to slip since it was promised, so that
- * each time is one call. `rescueBatchId`: the batch that would save it, moved back; null when none would, or none was looked for.
+ * each time is one call. `moved`: the last start of it that the plan put later when it began to; null when none moved by enough to be told. `cause`: of
+ * all that may still hold it up, the most. `rescueBatchId`: the batch that would save it, moved back; null when none would, or none was looked for.
  */
 export const promiseWatch = sqliteTable('promise_watch', {
   orderId: integer('order_id').primaryKey(),
@@ -34,6 +36,7 @@ export const promiseWatch = sqliteTable('promise_watch', {
   slips: integer('slips').notNull().default(0),
   sinceAt: instant('since_at'),
   cause: text('cause').$type<PromiseCause>(),
+  moved: text('moved', { mode: 'json' }).$type<MovedTurn>(),
   rescueBatchId: integer('rescue_batch_id'),
 }, t => [
   within(t, t.orderId, order), within(t, t.promiseId, promise), within(t, t.rescueBatchId, batch),

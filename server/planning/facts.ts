@@ -4,6 +4,7 @@ import { readVapourRooms } from '~~/server/planning/vapour'
 import type { Database } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { grouped } from '#shared/grouped'
+import type { OpenHours } from '#shared/open-hours'
 
 /** Statuses of steps that a plan has to do with. */
 const open = ['waiting', 'doing', 'resting'] as const
@@ -25,6 +26,9 @@ export function readPlanFacts(db: Database, studioId: number) {
   return { owner, pieces, steps: steps.filter(step => open.some(status => status === step.status)), aside: new Set(steps.filter(step => step.status === 'set aside').map(step => step.id)), turns, links, targets, vapour: readVapourRooms(db, studioId), ...readFilms(db, studioId), ...readHands(db, studioId), ...readLast(db, studioId) }
 }
 export type PlanFacts = NonNullable<ReturnType<typeof readPlanFacts>>
+
+/** When the studio itself is open, whoever is there. */
+export const studioHours = ({ hours, closures }: Pick<PlanFacts, 'hours' | 'closures'>): OpenHours => ({ open: hours.filter(each => each.memberId === null), closed: closures.filter(each => each.memberId === null) })
 
 /** The newest live film of each step with its times: what the next step waits for. */
 function readFilms(db: Database, studioId: number) {

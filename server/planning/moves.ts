@@ -1,3 +1,4 @@
+import { studioHours } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { turnIdOf } from '~~/server/planning/ids'
 import { MoveCauses } from '~~/server/planning/move-causes'
@@ -29,7 +30,7 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
   const last = new Map(facts.last.map(entry => [entry.turnId, entry]))
   const told = new Map(facts.lastChanges.map(change => [change.turnId, change]))
   const zone = studioZone(facts.owner.zone)
-  const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
+  const hours = studioHours(facts)
   // Thousands of turns may have moved in a few plans.
   const tills = new Map([...new Set(facts.lastChanges.flatMap(change => change.movedAt ?? []))].map(movedAt => [movedAt, toldTill(movedAt, hours, zone)]))
   const waiting = new Set(facts.turns.filter(turn => turn.status === 'waiting').map(turn => turn.id))

@@ -1,18 +1,21 @@
 import { and, desc, eq, isNotNull, isNull, sql } from 'drizzle-orm'
 import { batch, order, plan, promise, promiseWatch } from '~~/db/schema'
 import { estimateOf, estimatePlan } from '~~/server/planning/estimate'
-import { readPlanFacts } from '~~/server/planning/facts'
+import { readPlanFacts, studioHours } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import type { Search } from '~~/server/planning/search'
 import { luckOf, readBasis } from '~~/server/services/promise-basis'
+import { movedTurns } from '~~/server/services/plan-moves'
 import { asPlanned } from '~~/server/services/promises'
-import type { Database } from '~~/server/utils/database'
+import type { Database, Transaction } from '~~/server/utils/database'
 import { isRefusal } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
+import type { MoveCause, MovedTurn } from '#shared/plan-moves'
 import type { Estimate } from '#shared/promise/simulate'
 import { promiseCauses } from '#shared/terms'
 import type { PromiseCause } from '#shared/terms'
+import { studioZone } from '#shared/time'
 
 const minute = 60_000
 /** A promise is looked at again at most so often, ms. */
@@ -21,10 +24,10 @@ const lookAgainMs = 15 * minute
 const rescueMs = 150
 const rescueScenarios = 60
 
-interface Watched { orderId: number, promiseId: number, promisedAt: number, dateAt: number, batchIds: number[] }
+interface Watched { orderId: number, promiseId: number, promisedAt: number, madeAt: number, dateAt: number, batchIds: number[] }
 
-/** How one promise stands. `others`: batches that might save it, moved back, where it begins to slip; null where nothing is to be looked for. */
-interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, others: readonly number[] | null }
+/** How one promise stands. `moved`: what the plan put later since it last held; null where nothing is to be looked for, or nothing moved. `others`: batches that might save it, moved back, where it begins to slip; null where nothing is to be looked for. */
+interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, moved: MovedTurn | null, others: readonly number[] | null }
 
 /** What the watch asks of the worker, one question at a time, so that people's own come between. */
 interface WatchQuestions { reckon: () => Promise<Reckoned[] | Refusal>, saves: (orderId: number, batchId: number) => Promise<boolean | Refusal> }
@@ -61,7 +64,10 @@ export async function reckonPromises(db: Database, studioId: number, now: number
     if (!found) return []
     const at = (minutes: number) => made.given.zeroAt + minutes * minute
     const slips = at(found.cautious) > watched.promisedAt
-    return [{ watched, likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, others: slips && !wasSlipping(db, watched) ? othersThan(facts, watched) : null }]
+    const known = knownOf(db, watched)
+    const begins = slips && !(known?.slipping ?? false)
+    const moved = begins ? lastMoved(movedTurns(db, studioId, now, studioHours(facts), studioZone(facts.owner.zone)), watched, known?.reckonedAt ?? watched.madeAt) : null
+    return [{ watched, likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, moved, others: begins ? othersThan(facts, watched) : null }]
   })
 }
 
@@ -74,12 +80,22 @@ function toLookAt(db: Database, studioId: number, now: number): Watched[] {
 }
 
 function watchedOf(db: Database, studioId: number, { id, promisedAt }: typeof order.$inferSelect): Watched | null {
-  const last = db.select({ id: promise.id, dateAt: promise.dateAt }).from(promise).where(scoped(promise, studioId, eq(promise.orderId, id))).orderBy(desc(promise.id)).get()
+  const last = db.select({ id: promise.id, dateAt: promise.dateAt, madeAt: promise.madeAt }).from(promise).where(scoped(promise, studioId, eq(promise.orderId, id))).orderBy(desc(promise.id)).get()
   const batchIds = db.select({ id: batch.id }).from(batch).where(scoped(batch, studioId, eq(batch.orderId, id), isNull(batch.closedAt))).all().map(each => each.id)
-  return promisedAt !== null && last && batchIds.length > 0 ? { orderId: id, promiseId: last.id, promisedAt, dateAt: last.dateAt, batchIds } : null
+  return promisedAt !== null && last && batchIds.length > 0 ? { orderId: id, promiseId: last.id, promisedAt, madeAt: last.madeAt, dateAt: last.dateAt, batchIds } : null
 }
 
-const wasSlipping = (db: Database, { orderId }: Watched) => db.select({ slipping: promiseWatch.slipping }).from(promiseWatch).where(eq(promiseWatch.orderId, orderId)).get()?.slipping ?? false
+const knownOf = (db: Database | Transaction, { orderId }: Watched) => db.select().from(promiseWatch).where(eq(promiseWatch.orderId, orderId)).get()
+
+/** Whether a move can be led back to something that happened. */
+const hasRoot = (why: MoveCause): boolean => (why.code === 'follows' ? why.because !== null && hasRoot(why.because) : why.code !== 'fits better')
+
+/** Of an order's starts that a plan has put later since an instant (ms UTC), the last whose cause is known; else the last. */
+function lastMoved(moves: readonly MovedTurn[], { batchIds }: Watched, since: number): MovedTurn | null {
+  const later = moves.filter(move => batchIds.includes(move.batchId) && move.movedAt > since && move.isAt > move.wasAt)
+  const known = later.filter(move => hasRoot(move.why))
+  return (known.length > 0 ? known : later).reduce<MovedTurn | null>((last, move) => (last === null || move.isAt > last.isAt ? move : last), null)
+}
 
 const mainCause = ({ causes }: Estimate): PromiseCause => promiseCauses.reduce((most, cause) => (causes[cause] > causes[most] ? cause : most))
 
@@ -108,12 +124,13 @@ function withoutBatch(facts: PlanFacts, batchId: number): PlanFacts {
 }
 
 /** Writes how a promise stands. It begins to slip once, until it holds again and slips anew. `rescue` undefined: what was found before stays. */
-function note(db: Database, studioId: number, { watched: { orderId, promiseId }, likelyAt, dateAt, slips, cause }: Reckoned, rescue: number | null | undefined, now: number) {
+function note(db: Database, studioId: number, { watched, likelyAt, dateAt, slips, cause, moved }: Reckoned, rescue: number | null | undefined, now: number) {
   db.transaction((tx) => {
-    const known = tx.select().from(promiseWatch).where(eq(promiseWatch.orderId, orderId)).get()
+    const { orderId, promiseId } = watched
+    const known = knownOf(tx, watched)
     const begins = slips && !(known?.slipping ?? false)
     const values = {
-      studioId, promiseId, reckonedAt: now, likelyAt, dateAt, slipping: slips, cause, slips: (known?.slips ?? 0) + Number(begins),
+      studioId, promiseId, reckonedAt: now, likelyAt, dateAt, slipping: slips, cause, moved: begins ? moved : slips ? known?.moved ?? null : null, slips: (known?.slips ?? 0) + Number(begins),
       sinceAt: slips ? (begins ? now : known?.sinceAt ?? now) : null, rescueBatchId: slips ? (rescue === undefined ? known?.rescueBatchId ?? null : rescue) : null,
     }
     tx.insert(promiseWatch).values({ orderId, ...values }).onConflictDoUpdate({ target: promiseWatch.orderId, set: values }).run()

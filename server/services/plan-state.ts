@@ -1,6 +1,6 @@
 import { asc, sql } from 'drizzle-orm'
 import { plan, planSession, room } from '~~/db/schema'
-import { readPlanFacts } from '~~/server/planning/facts'
+import { readPlanFacts, studioHours } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { memberNames } from '~~/server/services/member-names'
 import { movedTurns } from '~~/server/services/plan-moves'
@@ -26,7 +26,7 @@ export function planState(db: Database, studioId: number, now: number): PlanStat
   const days = daysOf(facts, blocks, now)
   const until = days[days.length - 1]?.closesAt ?? now
   const names = memberNames(db, studioId)
-  const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
+  const hours = studioHours(facts)
   return {
     at: now, planMadeAt: current?.madeAt ?? null, days,
     people: facts.members.map(({ id }) => ({ memberId: id, name: names.get(id) ?? '', blocks: ofMember(blocks, id, names).filter(block => block.fromAt < until && block.toAt > now) })),
@@ -40,7 +40,7 @@ const partsOf = (kept: Readonly<Record<string, number>>): Objective => Object.fr
 /** The studio's hours day by day, widened to hold what is planned or in hand outside them. */
 function daysOf(facts: PlanFacts, blocks: readonly Pick<PlanBlock, 'fromAt' | 'toAt'>[], now: number): PlanDay[] {
   const zone = studioZone(facts.owner.zone)
-  const hours = { open: facts.hours.filter(each => each.memberId === null), closed: facts.closures.filter(each => each.memberId === null) }
+  const hours = studioHours(facts)
   return Array.from({ length: daysShown }, (_, ahead): PlanDay => {
     const date = addDays(localDate(now, zone), ahead)
     const [from, to] = [fromLocal(date, 0, zone), fromLocal(addDays(date, 1), 0, zone)]

@@ -74,7 +74,7 @@ function standingOf(db: Database, studioId: number, { id, promisedAt, tell }: ty
   if (promisedAt === null) return null
   const last = db.select({ madeAt: promise.madeAt }).from(promise).where(scoped(promise, studioId, eq(promise.orderId, id))).orderBy(desc(promise.id)).get()
   const watch = db.select({ watch: promiseWatch, rescue: batch.name }).from(promiseWatch).leftJoin(batch, eq(batch.id, promiseWatch.rescueBatchId)).where(scoped(promiseWatch, studioId, eq(promiseWatch.orderId, id))).get()
-  return { promisedAt, madeAt: last?.madeAt ?? null, slipping: watch?.watch.slipping ?? false, cause: watch?.watch.cause ?? null, cautiousAt: watch?.watch.dateAt ?? null, rescue: watch?.rescue ?? null, tell }
+  return { promisedAt, madeAt: last?.madeAt ?? null, slipping: watch?.watch.slipping ?? false, cause: watch?.watch.cause ?? null, moved: watch?.watch.moved ?? null, cautiousAt: watch?.watch.dateAt ?? null, rescue: watch?.rescue ?? null, tell }
 }
 
 /** Promises that slip, as the watch last found them, by order. `tells`: whether the reader may know who is to hear of it. */
@@ -123,7 +123,7 @@ export async function makePromise(db: Database, studioId: number, batchId: numbe
     tx.delete(promiseWatch).where(scoped(promiseWatch, studioId, eq(promiseWatch.orderId, orderId))).run()
   })
   const named = tell === undefined ? state.tell : tell
-  return { ...state, order: own.order?.name ?? request.orderName ?? null, tell: named, standing: { promisedAt: dateAt, madeAt: now, slipping: false, cause: null, cautiousAt: null, rescue: null, tell: named } }
+  return { ...state, order: own.order?.name ?? request.orderName ?? null, tell: named, standing: { promisedAt: dateAt, madeAt: now, slipping: false, cause: null, moved: null, cautiousAt: null, rescue: null, tell: named } }
 }
 
 /** An open order of that name takes the batch in, as at the start of a batch. */

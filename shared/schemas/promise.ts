@@ -1,5 +1,6 @@
 import * as z from 'zod/mini'
 import type { OpenHours } from '#shared/open-hours'
+import type { MovedTurn } from '#shared/plan-moves'
 import { instant } from '#shared/schemas/act'
 import type { PromiseCause } from '#shared/terms'
 import { fields as batchFields } from '#shared/words/batch'
@@ -54,7 +55,7 @@ export interface DateEstimate {
 }
 
 /** How a promised date stands by the newest plan. `rescue`: the batch that would save it, moved back. `tell`: who is to hear of a slip; null where nobody is named or the reader may not promise. */
-export interface PromiseStanding { promisedAt: number, madeAt: number | null, slipping: boolean, cause: PromiseCause | null, cautiousAt: number | null, rescue: string | null, tell: string | null }
+export interface PromiseStanding { promisedAt: number, madeAt: number | null, slipping: boolean, cause: PromiseCause | null, moved: MovedTurn | null, cautiousAt: number | null, rescue: string | null, tell: string | null }
 
 /** GET /api/batches/7/promise: the order of a batch, when it will be ready, and what was promised. `estimate` null with `why`: nobody can say. */
 export interface PromiseState {

@@ -4,6 +4,8 @@ import { promiseCauses } from '#shared/terms'
 import type { PromiseCause } from '#shared/terms'
 import { dateText, studioZone } from '#shared/time'
 import type { Clock } from '#shared/time'
+import type { Units } from '#shared/units'
+import { moveText } from '#shared/words/plan-moves'
 
 const greenwich = studioZone('UTC')
 
@@ -130,18 +132,24 @@ export function basisSentences({ reworkOfTen, benchShare, coats, redone, rework,
 }
 
 /** Of how a promise stands: "Promised Fri 11 Dec. It holds: nine of ten ways are done by Thu 10 Dec." */
-export function standingText({ promisedAt, slipping, cause, cautiousAt }: PromiseStanding, clock: Clock): string {
+export function standingText({ promisedAt, slipping, cause, moved, cautiousAt }: PromiseStanding, clock: Clock, units: Units): string {
   const promised = `Promised ${dateText(promisedAt, clock)}.`
   if (cautiousAt === null) return promised
   if (!slipping) return `${promised} It holds: nine of ten ways are done by ${dateText(cautiousAt, clock)}.`
-  return `${promised} It slips: nine of ten ways take till ${dateText(cautiousAt, clock)}${cause ? `, most of it by ${causeText(cause)}` : ''}.`
+  return `${promised} It slips: nine of ten ways take till ${dateText(cautiousAt, clock)}.${slipReason({ cause, moved }, clock, units)}`
+}
+
+/** What happened, where a start of the order moved; else what may still hold it up most, which is no claim that anything happened. */
+function slipReason({ cause, moved }: Pick<PromiseStanding, 'cause' | 'moved'>, clock: Clock, units: Units): string {
+  if (moved) return ` ${moveText([moved], clock, units)}`
+  return cause ? ` No start of it has moved by enough to be told; of all that may still hold it up, most is ${causeText(cause)}.` : ''
 }
 
 /** What would save a promise that slips. */
 export const rescueText = (rescue: string | null) => rescue === null ? 'No other batch, moved back alone, would save the date.' : `Say no to it, or move ${rescue} back: then the date holds.`
 
 /** Of a promise that slips, beside its batch: how it stands, whom to tell and what would save it. */
-export const slipText = (order: string, standing: PromiseStanding, clock: Clock) => `${standingText(standing, clock)} Tell ${standing.tell ?? `whoever ordered ${order}`}. ${rescueText(standing.rescue)}`
+export const slipText = (order: string, standing: PromiseStanding, clock: Clock, units: Units) => `${standingText(standing, clock, units)} Tell ${standing.tell ?? `whoever ordered ${order}`}. ${rescueText(standing.rescue)}`
 
 /** "by Tue 8 Dec 100 of 200 are ready": the picture in one sentence. */
 export function pictureText({ days, scenarios, likelyAt, promiseAt }: DateEstimate, clock: Clock): string {
@@ -154,11 +162,11 @@ export function pictureText({ days, scenarios, likelyAt, promiseAt }: DateEstima
 /** "Tue 8 Dec" of a local date. */
 export const dayText = (date: string) => dateText(Date.parse(`${date}T12:00:00Z`), { now: Date.parse(`${date}T12:00:00Z`), zone: greenwich })
 
-interface Slip { order: string, tell: string | null, promised: string, cautious: string, cause: PromiseCause | null, rescue: string | null }
+interface Slip extends Pick<PromiseStanding, 'cause' | 'moved' | 'rescue' | 'tell'> { order: string, promisedAt: number, cautiousAt: number }
 
 /** The call when a promised date is likely to pass. */
 export const slipCall = {
   title: (order: string) => `A promise slips: ${order}`,
-  body: ({ order, tell, promised, cautious, cause, rescue }: Slip) =>
-    `${order} is promised for ${promised}; nine of ten ways now take till ${cautious}${cause ? `, most of it by ${causeText(cause)}` : ''}. Tell ${tell ?? `whoever ordered ${order}`}. ${rescueText(rescue)}`,
+  body: ({ order, tell, promisedAt, cautiousAt, rescue, ...why }: Slip, clock: Clock, units: Units) =>
+    `${order} is promised for ${dateText(promisedAt, clock)}; nine of ten ways now take till ${dateText(cautiousAt, clock)}.${slipReason(why, clock, units)} Tell ${tell ?? `whoever ordered ${order}`}. ${rescueText(rescue)}`,
 } as const

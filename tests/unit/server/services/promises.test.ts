@@ -1,6 +1,6 @@
 import { eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
-import { batch, cause, openHours, order, promise, promiseWatch, reminder } from '~~/db/schema'
+import { batch, cause, closure, openHours, order, promise, promiseWatch, reminder } from '~~/db/schema'
 import { reckonPromises, savesPromise, watchPromises } from '~~/server/planning/promise-watch'
 import { atOnce, replan } from '~~/server/planning/replan'
 import { searchHere } from '~~/server/planning/search'
@@ -11,6 +11,7 @@ import { makePromise, promiseForNew, promiseState } from '~~/server/services/pro
 import { weekLoad } from '~~/server/services/week-load'
 import { studioZone } from '#shared/time'
 import { byThenText, slipCall, slipText } from '#shared/words/promise'
+import { copyAgain } from '~~/server/utils/database'
 import { hour, minute, testStudio } from '../../../helpers/studio'
 
 // A Tuesday.
@@ -120,9 +121,10 @@ describe('a promise', () => {
     expect(await giveAnd()).toMatchObject({ tell: 'Wren, 555 0100' })
     expect(db.select().from(order).get()?.tell).toBe('Wren, 555 0100')
     expect(await giveAnd('')).toMatchObject({ tell: null })
-    const slip = { order: 'Fair', promised: 'Friday', cautious: 'Monday', cause: null, rescue: null }
-    expect(slipCall.body({ ...slip, tell: 'Wren, 555 0100' })).toContain('Tell Wren, 555 0100.')
-    expect(slipCall.body({ ...slip, tell: null })).toContain('Tell whoever ordered Fair.')
+    const slip = { order: 'Fair', promisedAt: now + 3 * day, cautiousAt: now + 6 * day, cause: 'waiting' as const, moved: null, rescue: null }
+    const body = (tell: string | null) => slipCall.body({ ...slip, tell }, { now, zone: studioZone('UTC') }, 'metric')
+    expect(body('Wren, 555 0100')).toBe('Fair is promised for Fri 10 Apr; nine of ten ways now take till Mon 13 Apr. No start of it has moved by enough to be told; of all that may still hold it up, most is waiting for busy hands and its turn. Tell Wren, 555 0100. No other batch, moved back alone, would save the date.')
+    expect(body(null)).toContain('Tell whoever ordered Fair.')
   })
 
   it('is refused with a sentence for a day that is over, for nobody, and for another’s batch', async () => {
@@ -159,6 +161,30 @@ describe('a promise', () => {
     promiseFor(now + 2 * day)
     expect((await watch(now + 60 * minute)).map(each => each.status)).toEqual(['withdrawn', 'due'])
     expect(db.select().from(promiseWatch).get()).toMatchObject({ slipping: true, slips: 2 })
+  })
+
+  it('that slips says what happened: the start that moved, and why; without that it holds', async () => {
+    const studio = await studioWith()
+    const { db, studioId } = studio
+    await give(studio, (await ask(studio)).estimate.cautiousAt + 4 * hour)
+    expect(await look(studio, now + minute)).toBe(1)
+    expect(db.select().from(promiseWatch).get()).toMatchObject({ slipping: false, moved: null })
+    const later = now + 20 * minute
+    const stayed = { ...studio, db: copyAgain(db) }
+    // Shut from the day after tomorrow on, for a week.
+    db.insert(closure).values({ studioId, memberId: null, name: 'Shut', fromDate: '2026-04-09', toDate: '2026-04-17' }).run()
+    for (const each of [studio, stayed]) {
+      await replan(each.db, studioId, later, atOnce)
+      expect(await look(each, later + minute)).toBe(1)
+    }
+    const watch = db.select().from(promiseWatch).get()
+    expect(watch).toMatchObject({ slipping: true, moved: { batchId: studio.batchId, why: expect.any(Object) } })
+    tellingListener(db, studioId, later + minute)
+    const call = db.select({ body: reminder.body }).from(reminder).innerJoin(cause, eq(cause.id, reminder.causeId)).where(eq(cause.kind, 'promise slipping')).get()
+    expect(call?.body).toMatch(/ of Box [12] moves from .+ to .+: .*nobody who may do it works then\. Tell whoever ordered Fair\./)
+    // What it claims, reckoned: the same plan and look without the days that the studio is shut.
+    expect(stayed.db.select().from(promiseWatch).get()).toMatchObject({ slipping: false, moved: null })
+    stayed.db.$client.close()
   })
 
   it('is looked at only after a new plan, and at most every quarter of an hour', async () => {
@@ -199,12 +225,12 @@ describe('a promise', () => {
     const row = weekLoad(db, studioId, now + minute)?.batches.find(each => each.id === studio.batchId)
     expect(row?.slipping).toMatchObject({ slipping: true, rescue: expect.any(String) })
     if (!row?.slipping) throw new Error('The row of a batch whose promise slips says so.')
-    expect(slipText('Fair', row.slipping, { now, zone: studioZone('UTC') })).toMatch(/^Promised .*\. It slips: nine of ten ways take till .*\. Tell whoever ordered Fair\. Say no to it, or move \w+ back: then the date holds\.$/)
+    expect(slipText('Fair', row.slipping, { now, zone: studioZone('UTC') }, 'metric')).toMatch(/^Promised .*\. It slips: nine of ten ways take till .*\. Tell whoever ordered Fair\. Say no to it, or move \w+ back: then the date holds\.$/)
     // Who is to hear of it is named as in the call, to those who may promise.
     db.update(order).set({ tell: 'Wren, 555 0100' }).run()
     const slippingFor = (tells: boolean) => weekLoad(db, studioId, now + minute, tells)?.batches.find(each => each.id === studio.batchId)?.slipping
     expect(slippingFor(false)?.tell).toBeNull()
     const told = slippingFor(true)
-    expect(told && slipText('Fair', told, { now, zone: studioZone('UTC') })).toContain('. Tell Wren, 555 0100. ')
+    expect(told && slipText('Fair', told, { now, zone: studioZone('UTC') }, 'metric')).toContain('. Tell Wren, 555 0100. ')
   })
 })

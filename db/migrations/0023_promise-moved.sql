@@ -1,0 +1,1 @@
+ALTER TABLE `promise_watch` ADD `moved` text;
