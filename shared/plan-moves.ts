@@ -8,6 +8,7 @@ import type { StudioZone } from '#shared/time'
 /**
  * Why a turn lies elsewhere than people last heard. Only what the plan's own facts prove is named; else it says that it fits better now.
  * Instants are ms UTC; `tempC` is the coldest the room is foretold to become before the film is ready. Dust without a step: a film that lies open in the room.
+ * Ended: it moved for that reason, which has gone since, and has not been moved back.
  */
 export type MoveCause =
   | { code: 'pinned', by: string | null }
@@ -27,6 +28,7 @@ export type MoveCause =
   | { code: 'place', kind: PlaceKind }
   | { code: 'dust', step: string | null }
   | { code: 'vapour', step: string }
+  | { code: 'ended', because: MoveCause }
   | { code: 'fits better' }
 
 /** One turn that moved, as it is kept and as it is told. ms UTC. */

@@ -1,11 +1,10 @@
 import type { PlanFacts } from '~~/server/planning/facts'
-import { handsOf } from '~~/server/planning/hands'
+import { handsBefore, worksThrough } from '~~/server/planning/hands'
 import type { Hands } from '~~/server/planning/hands'
 import { activityId, memberIdOf } from '~~/server/planning/ids'
 import type { StudioProblem } from '~~/server/planning/problem'
 import type { MoveCause } from '#shared/plan-moves'
 import type { Activity, Plan, PlanEntry } from '#shared/planning/types'
-import { studioZone } from '#shared/time'
 
 const minute = 60_000
 
@@ -47,10 +46,9 @@ export class FreedCauses {
 
   /** Whether somebody did not work between two times (minutes from the problem's zero) by the hours that the last plan was made for. */
   private awayBefore(from: number, to: number): (hand: string) => boolean {
-    const { facts, given } = this.compared
-    if (facts.lastHours === null) return () => false
-    this.lastHands ??= handsOf({ ...facts, hours: facts.lastHours.open, closures: facts.lastHours.closed }, studioZone(facts.owner.zone), given.zeroAt, given.zeroAt + given.problem.horizon * minute)
-    const there = new Set(this.lastHands.filter(each => each.open.some(([opens, shuts]) => from >= opens && to <= shuts)).map(each => each.id))
+    this.lastHands ??= handsBefore(this.compared.facts, this.compared.given)
+    if (this.lastHands === null) return () => false
+    const there = new Set(this.lastHands.filter(each => worksThrough(each, from, to)).map(each => each.id))
     return hand => !there.has(hand)
   }
 

@@ -5,6 +5,7 @@ import { openSpans } from '#shared/open-hours'
 import { mayDoStep } from '#shared/permissions'
 import type { Interval } from '#shared/planning/types'
 import type { StepKind } from '#shared/terms'
+import { studioZone } from '#shared/time'
 import type { StudioZone } from '#shared/time'
 
 const minute = 60_000
@@ -40,3 +41,11 @@ export function handsOf(facts: HandsFacts, zone: StudioZone, zeroAt: number, unt
     }
   })
 }
+
+/** Hands by the hours that the last plan was made for, over the time of a problem; null where those were not kept. */
+export function handsBefore(facts: PlanFacts, { zeroAt, problem }: { zeroAt: number, problem: { horizon: number } }): Hands[] | null {
+  return facts.lastHours && handsOf({ ...facts, hours: facts.lastHours.open, closures: facts.lastHours.closed }, studioZone(facts.owner.zone), zeroAt, zeroAt + problem.horizon * minute)
+}
+
+/** Whether somebody works through a span (minutes from the problem's zero) in one go. */
+export const worksThrough = ({ open }: Pick<Hands, 'open'>, from: number, to: number): boolean => open.some(([opens, shuts]) => from >= opens && to <= shuts)

@@ -1,6 +1,7 @@
 import { dustKeptOff } from '~~/server/planning/dust'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { FreedCauses } from '~~/server/planning/freed-causes'
+import { worksThrough } from '~~/server/planning/hands'
 import { activityId, handsId, memberIdOf, turnIdOf } from '~~/server/planning/ids'
 import type { StepWork } from '~~/server/planning/lags'
 import type { StudioProblem } from '~~/server/planning/problem'
@@ -154,7 +155,7 @@ export class MoveCauses {
     if (work && !hand.may(work.step.kind)) return { code: 'not theirs', name: names.get(hand.memberId) ?? '' }
     const start = this.minutes(was.startsAt)
     const end = work?.step.mayRunOver ? start + 1 : this.minutes(was.endsAt)
-    return hand.open.some(([from, to]) => start >= from && end <= to) ? null : { code: 'hours', name: names.get(hand.memberId) ?? null }
+    return worksThrough(hand, start, end) ? null : { code: 'hours', name: names.get(hand.memberId) ?? null }
   }
 
   private film(code: 'film later' | 'film sooner', { work, id }: Spot, ready: number): MoveCause {
@@ -176,7 +177,7 @@ export class MoveCauses {
     const { given, names } = this.compared
     for (const { of, count } of activity.choices) {
       const end = was + (activity.mayRunOver ? 1 : entry.end - entry.start)
-      const there = of.filter(hand => given.hands.find(each => each.id === hand)?.open.some(([from, to]) => was >= from && end <= to))
+      const there = of.filter(hand => given.hands.some(each => each.id === hand && worksThrough(each, was, end)))
       if (there.length < count) return { code: 'hours', name: of.length === 1 ? names.get(memberIdOf(of[0] ?? '')) ?? null : null }
       const taken = there.map(hand => ({ hand, by: (this.busy.get(hand) ?? []).filter(each => !each.activities.includes(id) && overlaps(each, was, end)) }))
       const free = taken.filter(each => each.by.length === 0).length

@@ -2,6 +2,7 @@ import { studioHours } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { turnIdOf } from '~~/server/planning/ids'
 import { MoveCauses } from '~~/server/planning/move-causes'
+import { toldCauses } from '~~/server/planning/told-causes'
 import type { StudioProblem } from '~~/server/planning/problem'
 import type { WaitsToCome } from '~~/server/planning/waits'
 import { isNoticed, toldTill } from '#shared/plan-moves'
@@ -51,7 +52,8 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
     if (moved) found.moves.push({ turnId, wasAt, isAt, movedAt: now, why: causes.of(turnId, heardAt, isAt) })
     else if (fresh) found.moves.push({ turnId, wasAt, isAt, movedAt: fresh.movedAt, why: fresh.isAt === isAt ? fresh.why : stillWhy(fresh.why, causes.of(turnId, wasAt, isAt)) })
   }
-  return found
+  const kept = toldCauses(found.moves.filter(move => move.movedAt < now), { facts, given, made, toCome, names })
+  return { ...found, moves: found.moves.map(move => ({ ...move, why: kept.get(move.turnId) ?? move.why })) }
 }
 
 /** Why a move that was told with a cause has moved on a little: what is true now; where nothing shows it, the first cause, unless that names a time which has passed on too. */

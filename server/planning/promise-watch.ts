@@ -26,7 +26,7 @@ const rescueScenarios = 60
 
 interface Watched { orderId: number, promiseId: number, promisedAt: number, madeAt: number, dateAt: number, batchIds: number[] }
 
-/** How one promise stands. `moved`: what the plan put later since it last held; null where nothing is to be looked for, or nothing moved. `others`: batches that might save it, moved back, where it begins to slip; null where nothing is to be looked for. */
+/** How one promise stands. `moved`: what the plan put later when it began to slip; null where it holds, or nothing moved. `others`: batches that might save it, moved back, where it begins to slip; null where nothing is to be looked for. */
 interface Reckoned { watched: Watched, likelyAt: number, dateAt: number, slips: boolean, cause: PromiseCause | null, moved: MovedTurn | null, others: readonly number[] | null }
 
 /** What the watch asks of the worker, one question at a time, so that people's own come between. */
@@ -66,7 +66,8 @@ export async function reckonPromises(db: Database, studioId: number, now: number
     const slips = at(found.cautious) > watched.promisedAt
     const known = knownOf(db, watched)
     const begins = slips && !(known?.slipping ?? false)
-    const moved = begins ? lastMoved(movedTurns(db, studioId, now, studioHours(facts), studioZone(facts.owner.zone)), watched, known?.reckonedAt ?? watched.madeAt) : null
+    const moves = slips ? movedTurns(db, studioId, now, studioHours(facts), studioZone(facts.owner.zone)) : []
+    const moved = begins ? lastMoved(moves, watched, known?.reckonedAt ?? watched.madeAt) : slips ? asToldNow(known?.moved ?? null, moves) : null
     return [{ watched, likelyAt: at(found.likely), dateAt: at(found.cautious), slips, cause: slips ? mainCause(found) : null, moved, others: begins ? othersThan(facts, watched) : null }]
   })
 }
@@ -89,6 +90,9 @@ const knownOf = (db: Database | Transaction, { orderId }: Watched) => db.select(
 
 /** Whether a move can be led back to something that happened. */
 const hasRoot = (why: MoveCause): boolean => (why.code === 'follows' ? why.because !== null && hasRoot(why.because) : why.code !== 'fits better')
+
+/** A move as the plan in force tells it, whose reason may have gone since; as it was told where it no longer does. */
+const asToldNow = (told: MovedTurn | null, moves: readonly MovedTurn[]) => moves.find(move => move.turnId === told?.turnId && move.movedAt === told.movedAt) ?? told
 
 /** Of an order's starts that a plan has put later since an instant (ms UTC), the last whose cause is known; else the last. */
 function lastMoved(moves: readonly MovedTurn[], { batchIds }: Watched, since: number): MovedTurn | null {
@@ -130,7 +134,7 @@ function note(db: Database, studioId: number, { watched, likelyAt, dateAt, slips
     const known = knownOf(tx, watched)
     const begins = slips && !(known?.slipping ?? false)
     const values = {
-      studioId, promiseId, reckonedAt: now, likelyAt, dateAt, slipping: slips, cause, moved: begins ? moved : slips ? known?.moved ?? null : null, slips: (known?.slips ?? 0) + Number(begins),
+      studioId, promiseId, reckonedAt: now, likelyAt, dateAt, slipping: slips, cause, moved, slips: (known?.slips ?? 0) + Number(begins),
       sinceAt: slips ? (begins ? now : known?.sinceAt ?? now) : null, rescueBatchId: slips ? (rescue === undefined ? known?.rescueBatchId ?? null : rescue) : null,
     }
     tx.insert(promiseWatch).values({ orderId, ...values }).onConflictDoUpdate({ target: promiseWatch.orderId, set: values }).run()

@@ -54,7 +54,19 @@ export function causeText(why: MoveCause, clock: Clock, units: Units): string {
     case 'place': return `${places[why.kind]} then`
     case 'dust': return why.step === null ? 'a film in the room is not free of dust before' : `dust and wet film do not go together: ${titled(why.step)} is then`
     case 'vapour': return `vapour keeps it apart from ${titled(why.step)}`
+    case 'ended': return `${endedText(why.because)}; the plan has kept the new time`
     case 'fits better': return 'it fits better now'
+  }
+}
+
+/** A reason that held when something moved and has gone since. */
+function endedText(why: MoveCause): string {
+  switch (why.code) {
+    case 'hours': return why.name === null ? 'nobody who may do it worked then, which has changed since' : `${why.name} did not work then, which has changed since`
+    case 'not theirs': return `${why.name} did not do such work for a time`
+    case 'shut room': return `${why.room} stood shut, and is open again`
+    case 'pinned': return why.by === null ? 'it was pinned there, and the pin is gone' : `${why.by} had pinned it there, and the pin is gone`
+    default: return 'the reason for it has gone'
   }
 }
 

@@ -246,6 +246,29 @@ describe('what moved', () => {
     expect(whyOf(studio, second?.turnId ?? 0, now + 2 * minute)).toMatchObject({ code: 'follows', startsAt: now + 4 * hour + 20 * minute })
   })
 
+  it('no longer gives a closure as a reason that has been taken back, where the plan keeps its times', async () => {
+    const early = now - 3 * hour
+    const studio = plannedStudio(early, 'painted-waxed-box', 6)
+    const { db, studioId } = studio
+    await planAt(studio, early)
+    db.insert(closure).values({ studioId, memberId: null, name: 'Shut', fromDate: '2026-04-07', toDate: '2026-04-08' }).run()
+    await planAt(studio, early + minute)
+    const shut = { code: 'hours', name: null }
+    const blamed = movesAt(studio, early + minute).filter(each => JSON.stringify(each.why).includes(JSON.stringify(shut)))
+    expect(blamed.length).toBeGreaterThan(1)
+    const stayed = { ...studio, db: copyAgain(db) }
+    db.delete(closure).run()
+    for (const each of [studio, stayed]) await planAt(each, early + 2 * minute)
+    // With the closure it is said as before.
+    const whysOf = (each: Studio) => new Map(movesAt(each, early + 2 * minute).map(({ turnId, why }) => [turnId, why]))
+    expect(blamed.map(({ turnId }) => whysOf(stayed).get(turnId))).toEqual(blamed.map(({ why }) => why))
+    const kept = movesAt(studio, early + 2 * minute).filter(each => blamed.some(one => one.turnId === each.turnId && one.isAt === each.isAt))
+    expect(kept.length).toBeGreaterThan(0)
+    for (const { why } of kept) expect(JSON.stringify(why)).toContain(JSON.stringify({ code: 'ended', because: shut }))
+    expect(causeText({ code: 'ended', because: { code: 'hours', name: null } }, { now, zone }, 'metric')).toBe('nobody who may do it worked then, which has changed since; the plan has kept the new time')
+    stayed.db.$client.close()
+  })
+
   it('does not tell a start that went by in silence', async () => {
     const studio = plannedStudio(now, 'oiled-bowl', 1)
     await planAt(studio, now)
