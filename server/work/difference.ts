@@ -21,6 +21,6 @@ export function difference<Row, Wanted>(rows: readonly Row[], wanted: readonly W
 
 /** Whether every field of `wanted` already stands so in `row`. */
 export function holds(row: object, wanted: object): boolean {
-  const standing = new Map(Object.entries(row))
-  return Object.entries(wanted).every(([field, value]) => standing.get(field) === value)
+  const standing = row as Readonly<Record<string, unknown>>
+  return Object.entries(wanted).every(([field, value]) => standing[field] === value)
 }

@@ -8,6 +8,7 @@ import { readEdition } from '~~/server/work/schedule'
 import type { ScheduleEdition } from '~~/server/work/schedule'
 import { seedOf } from '~~/server/work/seed'
 import { storeFold } from '~~/server/work/store'
+import { readStored } from '~~/server/work/stored-rows'
 import { fold } from '#shared/work/fold'
 import type { Folded, SeedPart, WorkAct } from '#shared/work/types'
 
@@ -35,7 +36,9 @@ export function foldPieces(db: Database | Transaction, studioId: number, pieceId
 /** Folds pieces anew and writes the difference. Call inside the transaction that added the act. */
 export function refold(tx: Transaction, studioId: number, pieceIds: readonly number[]): FoldedPiece[] {
   const folded = foldPieces(tx, studioId, pieceIds)
-  for (const each of folded) storeFold(tx, studioId, each)
+  const partsOf = ({ parts }: FoldedPiece) => parts.map(each => each.id)
+  const storedOf = readStored(tx, studioId, folded.map(each => each.piece.id), folded.flatMap(partsOf))
+  for (const each of folded) storeFold(tx, studioId, each, storedOf(each.piece.id, partsOf(each)))
   return folded
 }
 

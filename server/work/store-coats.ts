@@ -1,14 +1,15 @@
-import { and, asc, eq, inArray } from 'drizzle-orm'
+import { eq, inArray } from 'drizzle-orm'
 import { coat, coatTarget, doubt, prediction, touchTest } from '~~/db/schema'
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { difference, holds } from '~~/server/work/difference'
+import type { StoredRows } from '~~/server/work/stored-rows'
 import type { TurnIds } from '~~/server/work/store-steps'
 import type { Folded, FoldedTest } from '#shared/work/types'
 
 /** Writes coats with what they lie on, their tests and the doubts that acts raised. A coat is known by the act that first told of it. */
-export function storeCoats(tx: Transaction, studioId: number, pieceId: number, folded: Folded, turnIds: TurnIds) {
-  const rows = tx.select().from(coat).where(scoped(coat, studioId, eq(coat.pieceId, pieceId))).all()
+export function storeCoats(tx: Transaction, studioId: number, pieceId: number, folded: Folded, turnIds: TurnIds, stored: StoredRows) {
+  const rows = stored.coats
   const wanted = folded.coats.map(({ targets: _targets, turn, ...each }) => ({ pieceId, turnId: turn ? turnIds.of(turn.step, turn.ordinal) : null, ...each }))
   const change = difference(rows, wanted, row => String(row.actId), each => String(each.actId), holds)
   if (change.removed.length > 0) tx.delete(coat).where(scoped(coat, studioId, inArray(coat.id, change.removed.map(row => row.id)))).run()
@@ -16,15 +17,16 @@ export function storeCoats(tx: Transaction, studioId: number, pieceId: number, f
   for (const each of change.changed) tx.update(coat).set({ ...each.wanted, settledAt: null }).where(scoped(coat, studioId, eq(coat.id, each.row.id))).run()
   const ids = new Map(rows.map(row => [row.actId, row.id]))
   for (const each of change.added) ids.set(each.actId, tx.insert(coat).values({ studioId, ...each }).returning({ id: coat.id }).get().id)
-  storeTargets(tx, studioId, folded, ids)
-  storeTests(tx, studioId, folded.tests, ids)
-  storeDoubts(tx, studioId, folded, ids)
+  const kept = new Set(folded.coats.flatMap(each => ids.get(each.actId) ?? []))
+  // What hung on a coat that is taken away has gone with it.
+  const removed = new Set(change.removed.map(row => row.id))
+  const left = <Row extends { coatId: number }>(hanging: Row[]) => hanging.filter(row => !removed.has(row.coatId))
+  storeTargets(tx, studioId, stored.coatTargets.filter(row => kept.has(row.coatId)), folded, ids)
+  storeTests(tx, studioId, left(stored.tests), folded.tests, ids)
+  storeDoubts(tx, studioId, left(stored.doubts), folded, ids)
 }
 
-function storeTargets(tx: Transaction, studioId: number, folded: Folded, ids: ReadonlyMap<number, number>) {
-  const coatIds = folded.coats.flatMap(each => ids.get(each.actId) ?? [])
-  if (coatIds.length === 0) return
-  const rows = tx.select().from(coatTarget).where(scoped(coatTarget, studioId, inArray(coatTarget.coatId, coatIds))).orderBy(asc(coatTarget.id)).all()
+function storeTargets(tx: Transaction, studioId: number, rows: StoredRows['coatTargets'], folded: Folded, ids: ReadonlyMap<number, number>) {
   const wanted = folded.coats.flatMap(each => each.targets.map(target => ({ studioId, coatId: ids.get(each.actId) ?? 0, ...target })))
   const keyOf = (target: { coatId: number, partId: number, faceId: number | null, layer: number }) => `${target.coatId} ${target.partId} ${target.faceId} ${target.layer}`
   const change = difference(rows, wanted, keyOf, keyOf, () => true)
@@ -33,10 +35,7 @@ function storeTargets(tx: Transaction, studioId: number, folded: Folded, ids: Re
   if (change.added.length > 0) tx.insert(coatTarget).values(change.added).run()
 }
 
-function storeTests(tx: Transaction, studioId: number, tests: readonly FoldedTest[], ids: ReadonlyMap<number, number>) {
-  const coatIds = [...ids.values()]
-  if (coatIds.length === 0) return
-  const rows = tx.select().from(touchTest).where(scoped(touchTest, studioId, inArray(touchTest.coatId, coatIds))).all()
+function storeTests(tx: Transaction, studioId: number, rows: StoredRows['tests'], tests: readonly FoldedTest[], ids: ReadonlyMap<number, number>) {
   const wanted = tests.flatMap(({ coatActId, ...test }) => {
     const coatId = ids.get(coatActId)
     return coatId === undefined ? [] : [{ studioId, coatId, ...test }]
@@ -56,10 +55,7 @@ function forecastOf(tx: Transaction, studioId: number, coatId: number, milestone
     .where(scoped(prediction, studioId, eq(prediction.coatId, coatId), eq(prediction.milestone, milestone))).get() ?? null
 }
 
-function storeDoubts(tx: Transaction, studioId: number, folded: Folded, ids: ReadonlyMap<number, number>) {
-  const coatIds = [...ids.values()]
-  if (coatIds.length === 0) return
-  const rows = tx.select().from(doubt).where(and(scoped(doubt, studioId, inArray(doubt.coatId, coatIds)), inArray(doubt.cause, ['failed', 'unknown']))).all()
+function storeDoubts(tx: Transaction, studioId: number, rows: StoredRows['doubts'], folded: Folded, ids: ReadonlyMap<number, number>) {
   const newest = new Map(folded.doubts.map(each => [`${each.coatActId} ${each.cause}`, each]))
   const wanted = [...newest.values()].flatMap(({ coatActId, ...each }) => {
     const coatId = ids.get(coatActId)

@@ -3,14 +3,15 @@ import { pieceStep, stepLink, stepTarget, turn } from '~~/db/schema'
 import type { Transaction } from '~~/server/utils/database'
 import { scoped } from '~~/server/utils/scoped'
 import { difference, holds } from '~~/server/work/difference'
+import type { StoredRows } from '~~/server/work/stored-rows'
 import type { Folded, Step } from '#shared/work/types'
 
 /** The numbers of a piece's turns by step key and ordinal. `prune` takes away rows that nothing stands on any more. */
 export interface TurnIds { of(step: string, ordinal: number): number | null, prune(): void }
 
 /** Writes steps, their targets, turns and links. Removal waits for `prune`, after the coats have let go of their turns. */
-export function storeSteps(tx: Transaction, studioId: number, pieceId: number, folded: Folded): TurnIds {
-  const rows = tx.select().from(pieceStep).where(scoped(pieceStep, studioId, eq(pieceStep.pieceId, pieceId))).all()
+export function storeSteps(tx: Transaction, studioId: number, pieceId: number, folded: Folded, stored: StoredRows): TurnIds {
+  const rows = stored.steps
   const columns = ({ targets: _targets, turns: _turns, ...step }: Step) => step
   const change = difference(rows, folded.steps, row => row.key, step => step.key, (row, step) => holds(row, columns(step)))
   const ids = new Map(rows.map(row => [row.key, row.id]))
@@ -24,9 +25,9 @@ export function storeSteps(tx: Transaction, studioId: number, pieceId: number, f
     if (found === undefined) throw new Error(`The fold of piece ${pieceId} names the step ${key}, which it does not have.`)
     return found
   }
-  storeTargets(tx, studioId, [...ids.values()], folded, idOf)
-  storeLinks(tx, studioId, [...ids.values()], folded, idOf)
-  const turns = storeTurns(tx, studioId, [...ids.values()], folded, idOf)
+  storeTargets(tx, studioId, stored.targets, folded, idOf)
+  storeLinks(tx, studioId, stored.links, folded, idOf)
+  const turns = storeTurns(tx, studioId, stored.turns, folded, idOf)
   return {
     of: (step, ordinal) => turns.ids.get(`${idOf(step)} ${ordinal}`) ?? null,
     prune: () => {
@@ -37,8 +38,7 @@ export function storeSteps(tx: Transaction, studioId: number, pieceId: number, f
 }
 
 /** A correction may put an unplanned coat on other faces, so the targets of a step that stays can change too. */
-function storeTargets(tx: Transaction, studioId: number, stepIds: number[], folded: Folded, idOf: (key: string) => number) {
-  const rows = stepIds.length === 0 ? [] : tx.select().from(stepTarget).where(scoped(stepTarget, studioId, inArray(stepTarget.stepId, stepIds))).all()
+function storeTargets(tx: Transaction, studioId: number, rows: StoredRows['targets'], folded: Folded, idOf: (key: string) => number) {
   const wanted = folded.steps.flatMap(step => step.targets.map(target => ({ studioId, stepId: idOf(step.key), ...target })))
   const keyOf = (target: { stepId: number, partId: number, faceId: number | null }) => `${target.stepId} ${target.partId} ${target.faceId}`
   const kept = new Set(folded.steps.map(step => idOf(step.key)))
@@ -47,8 +47,7 @@ function storeTargets(tx: Transaction, studioId: number, stepIds: number[], fold
   if (change.added.length > 0) tx.insert(stepTarget).values(change.added).run()
 }
 
-function storeLinks(tx: Transaction, studioId: number, stepIds: number[], folded: Folded, idOf: (key: string) => number) {
-  const rows = stepIds.length === 0 ? [] : tx.select().from(stepLink).where(scoped(stepLink, studioId, inArray(stepLink.fromStepId, stepIds))).all()
+function storeLinks(tx: Transaction, studioId: number, rows: StoredRows['links'], folded: Folded, idOf: (key: string) => number) {
   const wanted = folded.links.map(({ from, to, ...link }) => ({ studioId, fromStepId: idOf(from), toStepId: idOf(to), ...link }))
   const keyOf = (link: { fromStepId: number, toStepId: number }) => `${link.fromStepId} ${link.toStepId}`
   const change = difference(rows, wanted, keyOf, keyOf, holds)
@@ -58,8 +57,7 @@ function storeLinks(tx: Transaction, studioId: number, stepIds: number[], folded
   if (added.length > 0) tx.insert(stepLink).values(added).run()
 }
 
-function storeTurns(tx: Transaction, studioId: number, stepIds: number[], folded: Folded, idOf: (key: string) => number) {
-  const rows = stepIds.length === 0 ? [] : tx.select().from(turn).where(scoped(turn, studioId, inArray(turn.stepId, stepIds))).all()
+function storeTurns(tx: Transaction, studioId: number, rows: StoredRows['turns'], folded: Folded, idOf: (key: string) => number) {
   const wanted = folded.steps.flatMap(step => step.turns.map(each => ({ studioId, stepId: idOf(step.key), ...each })))
   const keyOf = (each: { stepId: number, ordinal: number }) => `${each.stepId} ${each.ordinal}`
   const change = difference(rows, wanted, keyOf, keyOf, holds)

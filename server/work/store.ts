@@ -6,17 +6,17 @@ import { scoped } from '~~/server/utils/scoped'
 import { difference, holds } from '~~/server/work/difference'
 import { storeCoats } from '~~/server/work/store-coats'
 import { storeSteps } from '~~/server/work/store-steps'
+import type { StoredRows } from '~~/server/work/stored-rows'
 import type { FoldedPiece } from '~~/server/work/refold'
 
 /** Writes the difference between a piece's rows and its fold. Rows that stay keep their numbers. */
-export function storeFold(tx: Transaction, studioId: number, { piece: row, parts, folded }: FoldedPiece) {
-  const partIds = parts.map(each => each.id)
-  const turnIds = storeSteps(tx, studioId, row.id, folded)
-  storeCoats(tx, studioId, row.id, folded, turnIds)
+export function storeFold(tx: Transaction, studioId: number, { piece: row, folded }: FoldedPiece, stored: StoredRows) {
+  const turnIds = storeSteps(tx, studioId, row.id, folded, stored)
+  storeCoats(tx, studioId, row.id, folded, turnIds, stored)
   turnIds.prune()
-  storeStays(tx, studioId, partIds, folded.stays)
-  storeAirNotes(tx, studioId, partIds, folded.airNotes)
-  storeJoins(tx, studioId, partIds, folded.joins)
+  storeStays(tx, studioId, stored.stays, folded.stays)
+  storeAirNotes(tx, studioId, stored.airNotes, folded.airNotes)
+  storeJoins(tx, studioId, stored.parts, folded.joins)
   const batchId = batchOf(tx, studioId, folded.batch) ?? row.batchId
   const branchId = storeBranch(tx, studioId, batchId, folded.branch)
   const counted = folded.steps.filter(step => step.status !== 'left out')
@@ -35,8 +35,7 @@ function ordinalIn(tx: Transaction, studioId: number, batchId: number, own: numb
   return taken.includes(own) ? Math.max(...taken) + 1 : own
 }
 
-function storeStays(tx: Transaction, studioId: number, partIds: number[], wanted: FoldedPiece['folded']['stays']) {
-  const rows = tx.select().from(stay).where(scoped(stay, studioId, inArray(stay.partId, partIds))).all()
+function storeStays(tx: Transaction, studioId: number, rows: StoredRows['stays'], wanted: FoldedPiece['folded']['stays']) {
   const change = difference(rows, wanted, row => `${row.partId} ${row.fromActId}`, each => `${each.partId} ${each.fromActId}`, holds)
   if (change.removed.length > 0) tx.delete(stay).where(scoped(stay, studioId, inArray(stay.id, change.removed.map(row => row.id)))).run()
   // Ends first: a part may stand in one place at a time, and the database says so.
@@ -46,16 +45,14 @@ function storeStays(tx: Transaction, studioId: number, partIds: number[], wanted
   if (change.added.length > 0) tx.insert(stay).values(change.added.map(each => ({ studioId, ...each }))).run()
 }
 
-function storeAirNotes(tx: Transaction, studioId: number, partIds: number[], wanted: FoldedPiece['folded']['airNotes']) {
-  const rows = tx.select().from(airNote).where(scoped(airNote, studioId, inArray(airNote.partId, partIds))).all()
+function storeAirNotes(tx: Transaction, studioId: number, rows: StoredRows['airNotes'], wanted: FoldedPiece['folded']['airNotes']) {
   const change = difference(rows, wanted, row => `${row.partId} ${row.actId}`, each => `${each.partId} ${each.actId}`, holds)
   if (change.removed.length > 0) tx.delete(airNote).where(scoped(airNote, studioId, inArray(airNote.id, change.removed.map(row => row.id)))).run()
   for (const each of change.changed) tx.update(airNote).set(each.wanted).where(scoped(airNote, studioId, eq(airNote.id, each.row.id))).run()
   if (change.added.length > 0) tx.insert(airNote).values(change.added.map(each => ({ studioId, ...each }))).run()
 }
 
-function storeJoins(tx: Transaction, studioId: number, partIds: number[], joins: FoldedPiece['folded']['joins']) {
-  const rows = tx.select({ id: part.id, intoPartId: part.intoPartId, joinedActId: part.joinedActId }).from(part).where(scoped(part, studioId, inArray(part.id, partIds))).all()
+function storeJoins(tx: Transaction, studioId: number, rows: StoredRows['parts'], joins: FoldedPiece['folded']['joins']) {
   for (const row of rows) {
     const join = joins.find(each => each.partId === row.id)
     const wanted = { intoPartId: join?.intoPartId ?? null, joinedActId: join?.actId ?? null }
