@@ -52,7 +52,7 @@ export function movesOf(facts: PlanFacts, given: StudioProblem, made: Plan, toCo
     if (moved) found.moves.push({ turnId, wasAt, isAt, movedAt: now, why: causes.of(turnId, heardAt, isAt) })
     else if (fresh) found.moves.push({ turnId, wasAt, isAt, movedAt: fresh.movedAt, why: fresh.isAt === isAt ? fresh.why : stillWhy(fresh.why, causes.of(turnId, wasAt, isAt)) })
   }
-  const kept = toldCauses(found.moves.filter(move => move.movedAt < now), { facts, given, made, toCome, names })
+  const kept = toldCauses(found.moves.filter(move => move.movedAt < now), { facts, given, toCome, names })
   return { ...found, moves: found.moves.map(move => ({ ...move, why: kept.get(move.turnId) ?? move.why })) }
 }
 

@@ -5,6 +5,7 @@ import { readPlanFacts } from '~~/server/planning/facts'
 import type { PlanFacts } from '~~/server/planning/facts'
 import { studioProblem } from '~~/server/planning/problem'
 import type { StudioProblem } from '~~/server/planning/problem'
+import { beforeEnded } from '~~/server/planning/told-causes'
 import { clearPlan, isCurrent, revisionOf, storePlan } from '~~/server/planning/store-plan'
 import { WaitsToCome } from '~~/server/planning/waits'
 import { solve } from '~~/server/planner/solve'
@@ -16,7 +17,7 @@ import { usePlanRunner } from '~~/server/utils/planRunner'
 import type { PlanResult, RunOptions } from '~~/server/utils/planRunner'
 import { minutesFrom } from '#shared/drying/waits'
 import { check } from '#shared/planning/check'
-import { freely } from '#shared/planning/objective'
+import { costOf, freely, objectiveOf } from '#shared/planning/objective'
 import type { Plan, PlanProblem } from '#shared/planning/types'
 
 /** Solves a problem somewhere: in the worker, or at once where a test or a seed wants to wait for nothing. */
@@ -55,14 +56,26 @@ export async function replan(db: Database, studioId: number, now: number, solver
   }
   const store = (plan: Plan) => keep(db, { facts, given, toCome }, plan, now)
   // A studio without a plan gets the first one at once; one with a plan sees only what is better.
-  const solved = await solver(String(studioId), anew ? freely(given.problem) : given.problem, (first, broken) => {
+  const asked = (problem: PlanProblem) => solver(String(studioId), anew ? freely(problem) : problem, (first, broken) => {
     if (facts.last.length === 0 && broken.length === 0) store(first)
   })
+  const back = beforeEnded({ facts, given, toCome, names: memberNames(db, studioId) }, now)
+  const solved = back ? await goneBack(asked, back, given.problem) : await asked(given.problem)
   if (!solved.ok) return { ok: false, reason: solved.reason === 'superseded' ? 'superseded' : 'not solved', message: solved.message }
   const { plan, broken } = solved
   if (broken.length > 0) return { ok: false, reason: 'not legal', message: `The plan of studio ${studioId} breaks ${broken.length} rules: ${JSON.stringify(broken.slice(0, 3))}` }
   if (!store(plan)) return { ok: false, reason: 'stale', message: 'The studio changed meanwhile.' }
   return { ok: true, planned: plan.entries.length }
+}
+
+/** The better of two plans by what people first heard: one led back to that, and the one in force repaired. */
+async function goneBack(asked: (problem: PlanProblem) => Promise<PlanResult>, back: PlanProblem, standing: PlanProblem): Promise<PlanResult> {
+  const returned = await asked(back)
+  const kept = await asked(standing)
+  if (!returned.ok || returned.broken.length > 0) return kept
+  if (!kept.ok || kept.broken.length > 0) return returned
+  const cost = ({ entries, sessions }: Plan) => costOf(back, objectiveOf(back, entries, sessions))
+  return cost(returned.plan) <= cost(kept.plan) ? returned : kept
 }
 
 interface Planned { facts: PlanFacts, given: StudioProblem, toCome: WaitsToCome }
