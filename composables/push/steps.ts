@@ -57,6 +57,20 @@ async function find(browser: BrowserParts): Promise<PushOutcome | { registration
   return browser.hasPush ? found : is('not supported')
 }
 
+/**
+ * The push address at which this browser is called; undefined when it is not, or cannot tell. Nothing is registered and nobody is asked.
+ * @param workers the browser's service workers, where it has any
+ */
+export async function ownEndpoint(workers: { getRegistration: () => Promise<{ pushManager?: Pick<PushRegistration['pushManager'], 'getSubscription'> } | undefined> } | undefined): Promise<string | undefined> {
+  try {
+    const registration = await workers?.getRegistration()
+    return (await registration?.pushManager?.getSubscription())?.endpoint
+  }
+  catch {
+    return undefined
+  }
+}
+
 /** How things stand now, without asking the person anything. */
 export async function lookUp(browser: BrowserParts, server: PushServer): Promise<PushOutcome> {
   const found = await find(browser)

@@ -1,6 +1,7 @@
 import { and, eq, gt, isNull } from 'drizzle-orm'
 import { member, passwordReset, person, session } from '~~/db/schema'
 import { openSession } from '~~/server/services/sessions'
+import { endSubscriptionsElsewhere } from '~~/server/services/subscriptions'
 import type { Database } from '~~/server/utils/database'
 import { absent } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
@@ -31,7 +32,7 @@ export function readReset(db: Database, token: string, now: number): { ok: true,
   return row ? { ok: true, email: row.email } : absent(entry.resetAbsent)
 }
 
-/** Sets the new password, once. Every browser that was signed in as this person is signed out; the one that asks is signed in. */
+/** Sets the new password, once. Every browser that was signed in as this person is signed out and called no more; the one that asks is signed in. */
 export async function setPassword(db: Database, token: string, password: string, now: number): Promise<{ ok: true, token: string } | Refusal> {
   const passwordHash = await makePasswordHash(password)
   return db.transaction((tx) => {
@@ -39,6 +40,7 @@ export async function setPassword(db: Database, token: string, password: string,
     if (!used) return absent(entry.resetAbsent)
     tx.update(person).set({ passwordHash }).where(eq(person.id, used.personId)).run()
     tx.update(session).set({ revokedAt: now }).where(and(eq(session.personId, used.personId), isNull(session.revokedAt))).run()
+    endSubscriptionsElsewhere(tx, used.personId, null, now)
     const first = tx.select({ studioId: member.studioId }).from(member).where(and(eq(member.personId, used.personId), isNull(member.leftAt))).orderBy(member.id).get()
     return { ok: true as const, token: openSession(tx, used.personId, first?.studioId ?? null, now) }
   }, { behavior: 'immediate' })

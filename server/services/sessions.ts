@@ -44,7 +44,7 @@ export function revokeSession(db: Database, sessionHash: string, now: number): v
 }
 
 /** Ends every other session of a person: whatever browser is left signed in elsewhere is signed out. Returns how many stood. */
-export function revokeOtherSessions(db: Database, personId: number, sessionHash: string, now: number): number {
+export function revokeOtherSessions(db: Database | Transaction, personId: number, sessionHash: string, now: number): number {
   return db.update(session).set({ revokedAt: now })
     .where(and(eq(session.personId, personId), ne(session.idHash, sessionHash), isNull(session.revokedAt), gt(session.expiresAt, now))).run().changes
 }

@@ -1,7 +1,7 @@
-import { eq, isNull } from 'drizzle-orm'
-import { subscription } from '~~/db/schema'
+import { and, eq, inArray, isNull, ne } from 'drizzle-orm'
+import { member, subscription } from '~~/db/schema'
 import { refuseEndpoint } from '~~/server/push/address'
-import type { Database } from '~~/server/utils/database'
+import type { Database, Transaction } from '~~/server/utils/database'
 import { absent, malformed } from '~~/server/utils/errors'
 import type { Refusal } from '~~/server/utils/errors'
 import { owned, scoped } from '~~/server/utils/scoped'
@@ -34,4 +34,17 @@ export function endSubscription(db: Database, studioId: number, memberId: number
   if (!row || row.memberId !== memberId) return absent()
   db.update(subscription).set({ goneAt: row.goneAt ?? now }).where(owned(subscription, studioId, id)).run()
   return { ok: true }
+}
+
+/**
+ * Stops calling every browser of a person, in all their studios, but one: a lost phone is to be told nothing more.
+ * @param kept the endpoint of the browser that asks; null when it has none, and then none is kept
+ * @returns how many browsers were called till now
+ */
+export function endSubscriptionsElsewhere(db: Database | Transaction, personId: number, kept: string | null, now: number): number {
+  const own = db.select({ id: member.id }).from(member).where(eq(member.personId, personId))
+  const rows = db.update(subscription).set({ goneAt: now })
+    .where(and(inArray(subscription.memberId, own), isNull(subscription.goneAt), kept === null ? undefined : ne(subscription.endpoint, kept)))
+    .returning({ endpoint: subscription.endpoint }).all()
+  return new Set(rows.map(row => row.endpoint)).size
 }

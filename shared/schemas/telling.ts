@@ -15,6 +15,9 @@ export const subscriptionBody = z.object({
   device: z.optional(z.string(fields.device).check(z.trim(), z.maxLength(80, fields.device))),
 })
 
+/** POST /api/auth/sign-out-elsewhere: at which push address the browser that asks is called; none where it is not. */
+export const signOutElsewhereBody = z.object({ endpoint: z.optional(z.string(fields.pushEndpoint).check(z.maxLength(2000, fields.pushEndpoint))) })
+
 /** POST /api/rags/[id]/answer */
 export const ragAnswerBody = z.strictObject({ answer: z.enum(ragAnswers, fields.ragAnswer) })
 

@@ -13,7 +13,7 @@ export const entry = {
   forgottenAct: 'Send the link',
   forgottenSent: (email: string) => `If somebody with the address ${email} belongs here, a mail is on its way. Its link opens for an hour.`,
   noMail: 'No mail goes out from here, so no link can be sent. Ask whoever set Stillwet up for your studio: they can make a link for you to choose a new password.',
-  resetFor: (email: string) => `For ${email}. Other browsers that are signed in with it are signed out.`,
+  resetFor: (email: string) => `For ${email}. Other browsers that are signed in with it are signed out, and no device gets calls till it asks for them anew.`,
   resetAct: 'Keep this password',
   resetAbsent: 'This link has been used or has run out. Ask for a new one.',
   backToSignIn: 'Back to signing in',

@@ -103,6 +103,19 @@ describe('a browser that asks to be called', () => {
     expect((await owner.get('/api/push/subscriptions')).body).toEqual([])
   })
 
+  it('is called no more when its person signs out everywhere else from another, which goes on being called, as does everybody else', async () => {
+    const at = async (who: Visitor, no: string) => who.post('/api/push/subscriptions', { endpoint: `https://push.example.org/${no}`, keys })
+    for (const no of ['lost', 'own', 'tablet']) await at(owner, no)
+    await at(helper, 'others')
+    const called = async (who: Visitor) => (await who.get<{ endpoint: string }[]>('/api/push/subscriptions')).body.map(row => row.endpoint.split('/').at(-1))
+    expect((await owner.post('/api/auth/sign-out-elsewhere', { endpoint: 'https://push.example.org/own' })).body).toMatchObject({ ok: true, uncalled: 2 })
+    expect([await called(owner), await called(helper)]).toEqual([['own'], ['others']])
+    // One that is not called itself keeps none.
+    expect((await owner.post('/api/auth/sign-out-elsewhere', {})).body).toMatchObject({ uncalled: 1 })
+    expect(await called(owner)).toEqual([])
+    expect((await owner.post('/api/auth/sign-out-elsewhere', { endpoint: 5 })).status).toBe(400)
+  })
+
   it('is told which field is wrong', async () => {
     const ask = async (body: object) => owner.post('/api/push/subscriptions', body)
     for (const endpoint of ['http://127.0.0.1:9/a', 'https://192.168.1.1/a', 'nonsense']) expect(await ask({ endpoint, keys })).toMatchObject({ status: 400, body: { data: { fields: { endpoint: expect.any(String) } } } })

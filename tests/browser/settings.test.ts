@@ -203,7 +203,7 @@ describe('one’s own sign-in', () => {
     const { page } = await openPage(browser, server.origin, {}, here)
     await visit(page, '/settings')
     await page.getByRole('button', { name: 'Sign out everywhere else' }).click()
-    await page.getByRole('dialog').getByText('a lost phone too').waitFor()
+    await page.getByRole('dialog').getByText('a lost phone too, and gets no more calls').waitFor()
     expect(await axeProblems(page)).toEqual([])
     await page.getByRole('dialog').getByRole('button', { name: 'Sign out everywhere else' }).click()
     await page.getByText(/^Signed out in \d+ other places?\.$/).waitFor()

@@ -1,6 +1,7 @@
 import { execFileSync } from 'node:child_process'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { mailService } from '../../helpers/mailReceiver'
+import { pushBrowser } from '../../helpers/pushReceiver'
 import { startServer } from '../../helpers/server'
 import type { TestServer } from '../../helpers/server'
 import { firstStudio, testPassword, visitor } from '../../helpers/sign-in'
@@ -32,7 +33,9 @@ async function letterTo(count: number) {
 const linkIn = (source: string) => /https:\/\/studio\.example\.test(\/reset\/[\w-]+)/.exec(source.replace(/=\r\n/g, ''))?.[1] ?? ''
 
 describe('a forgotten password', () => {
-  it('is chosen anew by a mailed link, once, and signs everybody else out', async () => {
+  it('is chosen anew by a mailed link, once, signs everybody else out, and ends the calls to every device', async () => {
+    const { p256dh, auth } = pushBrowser()
+    expect((await owner.post('/api/push/subscriptions', { endpoint: 'https://push.example.org/lost', keys: { p256dh, auth } })).status).toBe(200)
     expect((await stranger().post('/api/auth/forgotten', { email: address.toUpperCase() })).status).toBe(200)
     const letter = await letterTo(1)
     expect(letter?.to).toEqual([address])
@@ -43,6 +46,7 @@ describe('a forgotten password', () => {
     expect((await mine.post(`/api/auth${path}`, { password: 'sand between the coats' })).status).toBe(200)
     expect((await mine.get<{ person: { email: string } | null }>('/api/auth/session')).body.person?.email).toBe(address)
     expect((await owner.get('/api/members')).status).toBe(401)
+    expect((await mine.get('/api/push/subscriptions')).body).toEqual([])
     expect((await stranger().post(`/api/auth${path}`, { password: 'another one for it' })).status).toBe(404)
     expect((await stranger().post('/api/auth/sign-in', { email: address, password: testPassword })).status).toBe(422)
     expect((await stranger().post('/api/auth/sign-in', { email: address, password: 'sand between the coats' })).status).toBe(200)

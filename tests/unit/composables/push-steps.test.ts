@@ -1,5 +1,5 @@
 import { describe, expect, it, vi } from 'vitest'
-import { ServerRefusal, keyBytes, lookUp, subscribe, unsubscribe } from '../../../composables/push/steps'
+import { ServerRefusal, keyBytes, lookUp, ownEndpoint, subscribe, unsubscribe } from '../../../composables/push/steps'
 import type { BrowserParts, MadeSubscription, PushServer } from '../../../composables/push/steps'
 import { pushStates } from '#shared/words/call-settings'
 
@@ -83,6 +83,16 @@ describe('calls in a browser', () => {
     const ended = vi.spyOn(made, 'unsubscribe')
     expect((await subscribe(browserWith({ made }).browser, serverWith().server)).state).toBe('subscribed')
     expect(ended).toHaveBeenCalledOnce()
+  })
+
+  it('know at which address this browser is called, and ask for nothing to find it', async () => {
+    const made = browserWith().subscription(keyBytes(key))
+    const workers = (found: typeof made | null) => ({ getRegistration: async () => ({ pushManager: { getSubscription: async () => found } }) })
+    expect(await ownEndpoint(workers(made))).toBe(made.endpoint)
+    expect(await ownEndpoint(workers(null))).toBeUndefined()
+    expect(await ownEndpoint({ getRegistration: async () => undefined })).toBeUndefined()
+    expect(await ownEndpoint({ getRegistration: never })).toBeUndefined()
+    expect(await ownEndpoint(undefined)).toBeUndefined()
   })
 
   it('read a key of URL-safe base64', () => {
