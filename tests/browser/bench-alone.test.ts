@@ -78,6 +78,28 @@ describe('the states of a tablet', () => {
     expect(newestAct()).toMatchObject({ actor: 'bench', kind: 'coat on' })
   })
 
+  it('keeps the figures that are tapped while the answer to a wrong PIN is on its way', async () => {
+    const { page } = await tabletPage({}, bench.benchRoom, 60)
+    await visit(page, '/bench')
+    let answer = () => {}
+    const held = new Promise<void>(resolve => answer = resolve)
+    await page.route('**/api/bench/person', async (route) => {
+      await held
+      await route.continue()
+    })
+    await page.getByRole('button', { name: 'Open with a PIN' }).click()
+    await typePin(page, 'moss', '2590')
+    for (const figure of '25') await dialog(page).getByRole('button', { name: figure, exact: true }).click()
+    // Too soon: the key waits for its answer, and what was tapped stays.
+    await dialog(page).getByRole('button', { name: 'One moment' }).click()
+    answer()
+    await dialog(page).getByText('This PIN does not fit.').waitFor()
+    await dialog(page).getByText('2 figures typed').waitFor()
+    for (const figure of '80') await dialog(page).getByRole('button', { name: figure, exact: true }).click()
+    await dialog(page).getByRole('button', { name: 'That is it' }).click()
+    await page.getByRole('button', { name: 'Lock it' }).waitFor()
+  })
+
   it('slow or unreachable, a wrong or late answer leaves it locked and says why', async () => {
     const { page } = await tabletPage()
     await visit(page, '/bench')
