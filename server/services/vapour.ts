@@ -1,5 +1,5 @@
 import { and, asc, desc, eq, gt, inArray, isNotNull, isNull, sql } from 'drizzle-orm'
-import { cause, keepOut, material, materialVersion, member, person, ragDuty, reminder, room, seen, statement, studioRule, vapourLimit } from '~~/db/schema'
+import { act, cause, keepOut, material, materialVersion, member, person, ragDuty, reminder, room, seen, statement, studioRule, vapourLimit } from '~~/db/schema'
 import { cautionsOf, cautionsWith } from '~~/server/services/cautions'
 import { reshutMs } from '~~/server/services/keep-outs'
 import { memberNames } from '~~/server/services/member-names'
@@ -15,6 +15,7 @@ import type { RoomRow } from '~~/server/work/rooms-of-parts'
 import { findCaution } from '#shared/library/cautions'
 import { may } from '#shared/permissions'
 import type { RoomVapourState, StartState, VapourState } from '#shared/schemas/vapour'
+import { vapourPhase } from '#shared/solvent-rooms'
 import { isSolventBorne } from '#shared/vapour/facts'
 import { leversFor } from '#shared/vapour/picture'
 import type { NamedCoat } from '#shared/vapour/picture'
@@ -77,12 +78,14 @@ function startStates(db: Database, studioId: number, starts: Map<number, StartRo
     : db.select({ startId: cause.subjectId, reminderId: reminder.id }).from(cause).innerJoin(reminder, eq(reminder.causeId, cause.id))
         .where(scoped(cause, studioId, eq(cause.kind, 'vapour'), inArray(cause.subjectId, ids))).orderBy(desc(reminder.id)).all()
   const looks = calls.length === 0 ? [] : db.select().from(seen).where(scoped(seen, studioId, inArray(seen.reminderId, calls.map(each => each.reminderId)))).orderBy(asc(seen.at)).all()
+  const acts = new Map(ids.length === 0 ? [] : db.select({ id: act.id, kind: act.kind, doneAt: act.doneAt, toldAt: act.toldAt }).from(act).where(scoped(act, studioId, inArray(act.id, [...starts.values()].map(row => row.actId)))).all().map(row => [row.id, row]))
   const here = db.select({ id: member.id, name: person.name }).from(member).innerJoin(person, eq(person.id, member.personId)).where(scoped(member, studioId, isNull(member.leftAt))).orderBy(asc(member.id)).all()
   return new Map([...starts].map(([roomId, row]) => {
     const reminderId = calls.find(each => each.startId === row.id)?.reminderId ?? null
     const seenBy = looks.filter(each => each.reminderId === reminderId)
+    const told = acts.get(row.actId)
     return [roomId, {
-      id: row.id, at: row.at, by: names.get(row.memberId ?? 0) ?? null, answers: { exhaust: row.exhaust, flamesOff: row.flamesOff, nobodyElse: row.nobodyElse }, reminderId,
+      id: row.id, at: row.at, phase: told ? vapourPhase(told, told.toldAt) : 'began', by: names.get(row.memberId ?? 0) ?? null, answers: { exhaust: row.exhaust, flamesOff: row.flamesOff, nobodyElse: row.nobodyElse }, reminderId,
       seenBy: seenBy.map(each => ({ name: names.get(each.memberId) ?? '', at: each.at })),
       unseenBy: here.filter(each => each.id !== row.memberId && !seenBy.some(one => one.memberId === each.id)).map(each => each.name),
     }]

@@ -1,4 +1,5 @@
 import * as z from 'zod/mini'
+import type { VapourPhase } from '#shared/solvent-rooms'
 import type { Contribution, Levers, RoomSums } from '#shared/vapour/picture'
 import type { CautionKey } from '#shared/library/cautions'
 import type { RagAnswer } from '#shared/terms'
@@ -33,8 +34,8 @@ export const areaBody = z.strictObject({ areaM2: figure(0.0001, 1000, fields.are
 /** What stands beside the refusal (409) of solvent work that came without its answers: where they are asked for, and what to mind. */
 export interface VapourAsked { ask: 'vapour', rooms: { id: number, name: string, outdoor: boolean, sprayArea: boolean }[], cautions: CautionWire[], rules: string[] }
 
-/** A start of solvent work with the answers, and who has seen the call about it. */
-export interface StartState { id: number, at: number, by: string | null, answers: VapourAnswers, reminderId: number | null, seenBy: { name: string, at: number }[], unseenBy: string[] }
+/** A start of solvent work with the answers, what was true of it when it was told, and who has seen the call about it. */
+export interface StartState { id: number, at: number, phase: VapourPhase, by: string | null, answers: VapourAnswers, reminderId: number | null, seenBy: { name: string, at: number }[], unseenBy: string[] }
 
 /** One room as the Safety screen shows it. `now` counts what is wet, `ahead` also what the plan puts on within a day; null where nothing gives off vapour. */
 export interface RoomVapourState {

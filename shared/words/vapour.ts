@@ -1,5 +1,6 @@
 import { cautionParts } from '#shared/library/caution-parts'
 import type { InputSource, UsedInput } from '#shared/vapour/facts'
+import type { VapourPhase } from '#shared/solvent-rooms'
 import type { Contribution, Levers, RoomSums } from '#shared/vapour/picture'
 import type { FireStage, VapourBand, VapourInput } from '#shared/vapour/types'
 import type { VapourAnswers } from '#shared/schemas/act'
@@ -62,7 +63,7 @@ export const vapourWords = {
   seen: 'I have seen it',
   seenBy: (names: readonly string[]) => names.length > 0 ? `Seen by ${listText(names)}.` : 'Nobody has said that they saw it.',
   unseenBy: (names: readonly string[]) => `Not yet: ${listText(names)}.`,
-  started: (name: string | null, room: string, time: string, { exhaust, flamesOff, nobodyElse }: VapourAnswers) => `${name ?? 'The bench'} began solvent work in ${room}, ${time}. ${exhaust === 'running' ? 'The exhaust was said to run.' : 'There is no exhaust.'} ${flamesOff ? `No ${cautionParts.ignition} were said to be on` : `It was said that not all ${cautionParts.ignition} were off`}, and ${nobodyElse ? 'nobody else' : 'others'} inside.`,
+  started: (name: string | null, room: string, time: string, phase: VapourPhase, { exhaust, flamesOff, nobodyElse }: VapourAnswers) => `${name ?? 'The bench'} ${phase === 'film on' ? 'put a solvent film on' : 'began solvent work'} in ${room}, ${time}. ${exhaust === 'running' ? 'The exhaust was said to run.' : 'There is no exhaust.'} ${flamesOff ? `No ${cautionParts.ignition} were said to be on` : `It was said that not all ${cautionParts.ignition} were off`}, and ${nobodyElse ? 'nobody else' : 'others'} inside.`,
   rags: 'Oily rags',
   noRags: 'Nobody has to answer for rags now. Every drying oil asks again.',
   ragsCount: `${cautionParts.ragsHeat} ${cautionParts.ragsAll}`,

@@ -91,7 +91,7 @@ describe('the air of a room, from its set-up to its opening', () => {
     await spray(page).getByText('260 m³/h (160 cfm), 6.5 air changes an hour').first().waitFor()
     await spray(page).getByText('160 m³/h').first().waitFor()
     await spray(page).getByText('An exhaust rated for vapour that moves 260 m³/h.').waitFor()
-    await page.getByText(/Wren began solvent work in Spray room, .+\. The exhaust was said to run\./).waitFor()
+    await page.getByText(/Wren put a solvent film on in Spray room, .+\. The exhaust was said to run\./).waitFor()
     // The browser speaks of the answer that asks the three things; nothing else may stand there.
     expect(problems.filter(problem => !problem.includes('409'))).toEqual([])
   }, 240_000)

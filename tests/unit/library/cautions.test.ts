@@ -96,7 +96,7 @@ describe('their reading age', () => {
     const filled = [
       callWords.rags.body('the bench room', '14:10'), callWords.rags.again('the bench room', '14:10'), ...(['begins', 'began', 'film on'] as const).flatMap(phase => [callWords.vapour.body('the spray room', 'Moss', true, phase), callWords.vapour.body('the spray room', null, false, phase)]),
       callWords.checkRoom.body('the spray room', 'Moss'), startVapour.ask('the spray room'), startVapour.sleptIn('the attic'), startVapour.keepOut('the spray room', 'Moss'), startVapour.isocyanate('This glue'), startVapour.oldObject('The dresser', 'lead not ruled out'),
-      roomWords.since('14:10', 'Moss'), vapourWords.started('Moss', 'the spray room', '14:10', { exhaust: 'running', flamesOff: true, nobodyElse: true }), wallForm.spray('the spray room'), sheetVapour(['Spray room'], briefCautions(['flames', 'vapour', 'phones'])).says, pieceWords.intakeTested, pieceWords.oldSays,
+      roomWords.since('14:10', 'Moss'), vapourWords.started('Moss', 'the spray room', '14:10', 'film on', { exhaust: 'running', flamesOff: true, nobodyElse: true }), wallForm.spray('the spray room'), sheetVapour(['Spray room'], briefCautions(['flames', 'vapour', 'phones'])).says, pieceWords.intakeTested, pieceWords.oldSays,
     ]
     const words = (value: unknown): string[] => typeof value === 'string' ? [value] : typeof value === 'object' && value !== null ? Object.values(value).flatMap(words) : []
     const said = [...words(bandText), ...words(fireText), ...words(startVapour), ...words(vapourWords), ...words(roomWords), ...words(vapourRefusals), ...filled]

@@ -179,6 +179,7 @@ describe('the call about solvent work', () => {
     const called = (at: number) => wantedReminders(db, studioId, at).filter(call => call.kind === 'vapour').map(call => call.path)
     lacquer(1, { vapour: none, doneAt: now - 30 * minute })
     expect(listed(now)).toHaveLength(1)
+    expect(vapourState(db, studioId, members.owner, now).rooms.find(each => each.roomId === rooms.spray)?.start?.phase).toBe('film on')
     expect(called(now)).toEqual([`/safety?start=${listed(now)[0]}`])
     expect(vapourState(db, studioId, members.owner, now).rooms.find(each => each.roomId === rooms.spray)?.exhaustRuns).toBe(false)
     // It is told of for two hours, and so long it is listed, unless the room is opened.
