@@ -1,7 +1,7 @@
 /** Why there is no worker: plain http in a studio's network, or a browser without them. */
 export type WorkerState = 'none yet' | 'ready' | 'not over plain http' | 'not in this browser' | 'failed'
 
-/** Registers the worker that receives calls. Asking twice gives the same registration. */
+/** Registers the worker that receives calls and stands in for a studio out of reach. Asking twice gives the same registration. */
 export function useServiceWorker() {
   const state = useState<WorkerState>('service-worker', () => 'none yet')
   const registration = shallowRef<ServiceWorkerRegistration | null>(null)

@@ -4,7 +4,7 @@ import { ownBundle } from './own-bundle'
 
 /**
  * Builds `service-worker/sw.ts` into one classic script served as /sw.js. A precaching module was refused:
- * the board is useless without the studio's word, so nothing of the shell is kept offline.
+ * the board is useless without the studio's word, so nothing of the shell is kept offline; the page that says so is made by the worker.
  */
 export default defineNuxtModule({
   meta: { name: 'stillwet:service-worker' },

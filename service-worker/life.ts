@@ -1,4 +1,4 @@
-/** A new worker replaces the old one at once: it keeps no pages, so nothing can be mixed up. */
+/** A new worker replaces the old one at once: it keeps no pages (the one for a studio out of reach it makes itself), so nothing can be mixed up. */
 export function takeOver(scope: ServiceWorkerGlobalScope) {
   scope.addEventListener('install', (event) => {
     event.waitUntil(scope.skipWaiting())

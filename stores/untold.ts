@@ -1,9 +1,9 @@
 import { defineStore } from 'pinia'
 import { FetchError } from 'ofetch'
 import type { ActAnswer, ActRequest } from '#shared/schemas/act'
+import { untoldShelves } from '#shared/untold-shelves'
 
-/** A person's taps and a bench tablet's lie apart on a device that is both. */
-const shelvesOf = (atBench: boolean) => atBench ? { acts: 'stillwet untold at the bench', refused: 'stillwet refused at the bench' } : { acts: 'stillwet untold', refused: 'stillwet refused' }
+const shelvesOf = (atBench: boolean) => untoldShelves[atBench ? 'bench' : 'own']
 /** An act without an answer for so long counts as not told yet: telling it twice under its key records it once. ms. */
 const answerMs = 15_000
 

@@ -18,18 +18,18 @@ export interface Watched {
 }
 
 /**
- * A page of its own context, watched.
+ * A page of its own context, watched. Without a worker, whose requests a test could neither see nor hold back, unless it is asked for.
  * @param as somebody signed in over HTTP, whose cookie the browser gets
  */
 export async function openPage(browser: Browser, origin: string, options: BrowserContextOptions = {}, as?: Visitor): Promise<Watched> {
-  const context = await browser.newContext({ baseURL: origin, viewport: { width: 390, height: 844 }, locale: 'en-GB', timezoneId: 'Europe/London', ...options })
+  const context = await browser.newContext({ baseURL: origin, viewport: { width: 390, height: 844 }, locale: 'en-GB', timezoneId: 'Europe/London', serviceWorkers: 'block', ...options })
   if (as) {
     const [name = '', ...value] = as.cookie().split('=')
     await context.addCookies([{ name, value: value.join('='), url: origin }])
   }
   const page = await context.newPage()
   const problems: string[] = []
-  page.on('console', message => ['error', 'warning'].includes(message.type()) && problems.push(`${message.type()}: ${message.text()}`))
+  page.on('console', message => ['error', 'warning'].includes(message.type()) && !message.text().includes('Service Worker registration blocked') && problems.push(`${message.type()}: ${message.text()}`))
   page.on('pageerror', error => problems.push(`script: ${error.message}`))
   page.on('request', (request) => {
     if (!request.url().startsWith(origin) && !/^(data|blob):/.test(request.url())) problems.push(`outside: ${request.url()}`)
