@@ -18,8 +18,8 @@ import type { PromiseCause } from '#shared/terms'
 import { studioZone } from '#shared/time'
 
 const minute = 60_000
-/** A promise is looked at again at most so often, ms. */
-const lookAgainMs = 15 * minute
+/** A promise that holds is looked at again at most so often, and one that slips, whose words stand on the screen till then, ms. */
+const lookAgainMs = { holds: 15 * minute, slips: 2 * minute }
 /** How long each batch that is tried moved back is searched for, ms, and in how many scenarios. */
 const rescueMs = 150
 const rescueScenarios = 60
@@ -75,9 +75,9 @@ export async function reckonPromises(db: Database, studioId: number, now: number
 function toLookAt(db: Database, studioId: number, now: number): Watched[] {
   const current = db.select({ madeAt: plan.madeAt }).from(plan).where(scoped(plan, studioId, sql`${plan.current} = 1`)).get()
   if (!current) return []
-  const orders = db.select({ order, reckonedAt: promiseWatch.reckonedAt }).from(order).leftJoin(promiseWatch, eq(promiseWatch.orderId, order.id))
+  const orders = db.select({ order, reckonedAt: promiseWatch.reckonedAt, slipping: promiseWatch.slipping }).from(order).leftJoin(promiseWatch, eq(promiseWatch.orderId, order.id))
     .where(and(scoped(order, studioId, isNotNull(order.promisedAt), isNull(order.closedAt)))).all()
-  return orders.flatMap(({ order: row, reckonedAt }) => (reckonedAt !== null && (now - reckonedAt < lookAgainMs || current.madeAt <= reckonedAt) ? [] : watchedOf(db, studioId, row) ?? []))
+  return orders.flatMap(({ order: row, reckonedAt, slipping }) => (reckonedAt !== null && (now - reckonedAt < lookAgainMs[slipping ? 'slips' : 'holds'] || current.madeAt <= reckonedAt) ? [] : watchedOf(db, studioId, row) ?? []))
 }
 
 function watchedOf(db: Database, studioId: number, { id, promisedAt }: typeof order.$inferSelect): Watched | null {

@@ -43,9 +43,9 @@ export function causeText(why: MoveCause, clock: Clock, units: Units): string {
     case 'film later': return filmText(why, clock, units)
     case 'film sooner': return `${titled(why.step)} lets it begin sooner, from ${roughTime(why.readyAt, clock, 'up')}`
     case 'not told': return `nobody has said whether ${titled(why.step)} was done, due ${at(why.dueAt, clock)}`
-    case 'follows': return `it follows ${titled(why.step)}, now at ${at(why.startsAt, clock)}${why.because === null ? '' : `; ${causeText(why.because, clock, units)}`}`
+    case 'follows': return `it follows ${titled(why.step)}, now at ${at(why.startsAt, clock)}${why.because === null ? '' : `; that moved because ${causeText(why.because, clock, units)}`}`
     case 'step added': return `${titled(why.step)} was put in before it`
-    case 'hours': return why.name === null ? 'nobody who may do it works then' : `${why.name} does not work then`
+    case 'hours': return why.name === null ? 'nobody who may do it works at the old time' : `${why.name} does not work at the old time`
     case 'not theirs': return `${why.name} does not do such work any more`
     case 'hands': return `${why.name ?? 'everybody who may do it'} is at ${titled(why.step)} of ${why.added ? 'the new batch ' : ''}${why.batch} then${why.name === null ? ' or at other work' : ''}${why.because ? `; that moved because ${causeText(why.because, clock, units)}` : ''}`
     case 'opened': return `${why.name ?? 'somebody who may do it'} works then now`
@@ -62,7 +62,7 @@ export function causeText(why: MoveCause, clock: Clock, units: Units): string {
 /** A reason that held when something moved and has gone since. */
 function endedText(why: MoveCause): string {
   switch (why.code) {
-    case 'hours': return why.name === null ? 'nobody who may do it worked then, which has changed since' : `${why.name} did not work then, which has changed since`
+    case 'hours': return why.name === null ? 'nobody who may do it worked at the old time, which has changed since' : `${why.name} did not work at the old time, which has changed since`
     case 'not theirs': return `${why.name} did not do such work for a time`
     case 'shut room': return `${why.room} stood shut, and is open again`
     case 'pinned': return why.by === null ? 'it was pinned there, and the pin is gone' : `${why.by} had pinned it there, and the pin is gone`

@@ -118,7 +118,7 @@ describe('what moved', () => {
     expect(told.some(each => theirs.has(each.turnId) && JSON.stringify(each.why) === JSON.stringify(away))).toBe(true)
     const gaveWay = told.find(each => each.why.code === 'hands')
     expect(gaveWay?.why).toMatchObject({ name: 'The owner', step: 'Glue up the box', because: away })
-    expect(moveText(gaveWay ? [gaveWay] : [], { now: early, zone }, 'metric')).toMatch(/: The owner is at “Glue up the box” of Boxs then; that moved because The maker does not work then\.$/)
+    expect(moveText(gaveWay ? [gaveWay] : [], { now: early, zone }, 'metric')).toMatch(/: The owner is at “Glue up the box” of Boxs then; that moved because The maker does not work at the old time\.$/)
     expect(told.filter(each => each.why.code === 'fits better' || each.why.code === 'window missed')).toEqual([])
     // What it claims, solved: the same plan a minute later with nobody away.
     await planAt(stayed, early + minute)
@@ -284,7 +284,7 @@ describe('what moved', () => {
     const kept = movesAt(studio, early + 2 * minute).filter(each => blamed.some(one => one.turnId === each.turnId && one.isAt === each.isAt))
     expect(kept.some(({ why }) => JSON.stringify(why).includes(JSON.stringify({ code: 'ended', because: shut })))).toBe(true)
     expect(kept.filter(({ why }) => JSON.stringify(why).replaceAll(JSON.stringify({ code: 'ended', because: shut }), '').includes(JSON.stringify(shut)))).toEqual([])
-    expect(causeText({ code: 'ended', because: { code: 'hours', name: null } }, { now, zone }, 'metric')).toBe('nobody who may do it worked then, which has changed since; the plan has kept the new time')
+    expect(causeText({ code: 'ended', because: { code: 'hours', name: null } }, { now, zone }, 'metric')).toBe('nobody who may do it worked at the old time, which has changed since; the plan has kept the new time')
   })
 
   it('goes back to what people first heard when a pin is taken away', async () => {

@@ -181,7 +181,7 @@ describe('a promise', () => {
     expect(watch).toMatchObject({ slipping: true, moved: { batchId: studio.batchId, why: expect.any(Object) } })
     tellingListener(db, studioId, later + minute)
     const call = db.select({ body: reminder.body }).from(reminder).innerJoin(cause, eq(cause.id, reminder.causeId)).where(eq(cause.kind, 'promise slipping')).get()
-    expect(call?.body).toMatch(/ of Box [12] moves from .+ to .+: .*nobody who may do it works then\. Tell whoever ordered Fair\./)
+    expect(call?.body).toMatch(/ of Box [12] moves from .+ to .+: .*nobody who may do it works at the old time\. Tell whoever ordered Fair\./)
     // What it claims, reckoned: the same plan and look without the days that the studio is shut.
     expect(stayed.db.select().from(promiseWatch).get()).toMatchObject({ slipping: false, moved: null })
     stayed.db.$client.close()
@@ -196,6 +196,13 @@ describe('a promise', () => {
     await replan(db, studioId, now + 5 * minute, atOnce)
     expect(await look(studio, now + 10 * minute)).toBe(0)
     expect(await look(studio, now + 17 * minute)).toBe(1)
+    // One that slips does not stand on the screen for longer than it does.
+    db.update(order).set({ promisedAt: now + 2 * day }).run()
+    await replan(db, studioId, now + 34 * minute, atOnce)
+    expect(await look(studio, now + 35 * minute)).toBe(1)
+    expect(db.select().from(promiseWatch).get()?.slipping).toBe(true)
+    await replan(db, studioId, now + 36 * minute, atOnce)
+    expect([await look(studio, now + 36 * minute), await look(studio, now + 37 * minute), await look(studio, now + 40 * minute)]).toEqual([0, 1, 0])
   })
 
   it('names, of all others, the first batch that would save it, and it would: the date holds without that work', async () => {
