@@ -5,7 +5,11 @@ import { walkWords } from '#shared/words/walk-round'
 export interface Expected { piece: PieceState, partIds: number[], name: string, seenAt: number | null, missing: boolean }
 export interface Stop { place: PlaceState, room: string, expected: Expected[] }
 
-const oldest = (times: readonly (number | null)[]) => times.some(at => at === null) ? null : Math.min(...times.map(Number))
+/** A part that was joined to another has no place of its own, so nobody sees it by itself: it counts with its fellow. */
+function oldest(times: readonly (number | null)[]): number | null {
+  const known = times.flatMap(at => at ?? [])
+  return known.length === 0 ? null : Math.min(...known)
+}
 
 /** Every place where something should stand, in the order of the rooms, with what should be there. */
 export function walkStops(state: Pick<StudioState, 'places' | 'rooms' | 'pieces'>): Stop[] {
