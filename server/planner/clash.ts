@@ -99,13 +99,14 @@ function outsideHours(problem: PlanProblem, id: string, start: number, end: numb
   return open !== null && !open.some(([from, to]) => start >= from && end <= to)
 }
 
-/** Fixed starts from minute 0 on that do not fit the hours, the capacity or each other. They stay where they are; somebody should know. */
+/** Fixed starts from minute 0 on of work that nobody has begun, and that do not fit the hours, the capacity or each other. They stay where they are; somebody should know. */
 export function nameFixed(board: Board): Conflict[] {
   const { model } = board
   const { problem } = model
   const found: Conflict[] = []
+  const begun = new Set(problem.fixed.flatMap(fixed => fixed.begun || fixed.start < 0 ? model.index.get(fixed.activity)! : []))
   for (const fixed of problem.fixed) {
-    if (fixed.start < 0) continue
+    if (begun.has(model.index.get(fixed.activity)!)) continue
     const i = model.index.get(fixed.activity)!
     const uses = [...Object.keys(problem.activities[i]!.uses), ...fixed.resources]
     for (const id of new Set(uses)) {
@@ -114,7 +115,7 @@ export function nameFixed(board: Board): Conflict[] {
     }
   }
   for (const lag of model.lags) {
-    if (!model.isFixed[lag.to] || (lag.from !== none && !model.isFixed[lag.from]) || model.fixedStart[lag.to]! < 0) continue
+    if (!model.isFixed[lag.to] || (lag.from !== none && !model.isFixed[lag.from]) || begun.has(lag.to)) continue
     const wait = model.fixedStart[lag.to]! - (lag.from === none ? 0 : model.fixedEnd[lag.from]!)
     const inside = lag.waits.some((from, i) => i % 2 === 0 && wait >= from && wait <= lag.waits[i + 1]!)
     if (!inside) found.push({ ...nothing, kind: 'fixed', activity: problem.activities[lag.to]!.id, lag: lag.lag, other: lag.from === none ? null : problem.activities[lag.from]!.id })

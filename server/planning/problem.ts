@@ -168,12 +168,24 @@ function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCo
   const last = new Map(facts.last.map(entry => [entry.turnId, entry]))
   // Of several pins of one turn the first counts.
   const pins = new Map(facts.pins.filter(pin => pin.startsAt >= zeroAt).reverse().map(pin => [pin.turnId, pin]))
+  const after = rowsInHand()
   return works.flatMap(work => work.turns.flatMap((turn) => {
     const { step } = work
     const able = () => handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind)).map(each => each.id)
     const chosen = (memberId: number | null) => chosenHands(able(), [...memberId === null ? [] : [memberId], ...last.get(turn.id)?.memberIds ?? []], step.hands)
-    if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor), resources: chosen(turn.doingMemberId) }]
+    if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor) + after(step, turn), resources: chosen(turn.doingMemberId), begun: true }]
     const pinned = pins.get(turn.id)
-    return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId) }] : []
+    return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId), begun: false }] : []
   }))
+}
+
+/** A row begun in one go is worked one after the other: how many minutes after its beginning the next of it has its turn. */
+function rowsInHand() {
+  const worked = new Map<string, number>()
+  return (step: StepWork['step'], turn: TurnRow): number => {
+    const row = `${step.key} ${turn.beganAt} ${turn.doingMemberId}`
+    const before = worked.get(row) ?? 0
+    worked.set(row, before + turn.minutes)
+    return before
+  }
 }

@@ -132,6 +132,8 @@ export function checkTime(doneAt: number, now: number): Refusal | null {
 
 const laying: readonly TellableKind[] = ['coat on', 'glue-up on']
 const workKinds: readonly TellableKind[] = ['began', 'coat on', 'glue-up on', 'not on yet', 'it is out', 'work done', 'turned over', 'check done', 'enough']
+/** What is told at its end, of a row worked one after the other. A beginning, and that nothing is on yet, is one moment for the whole row. */
+const rowKinds: readonly TellableKind[] = workKinds.filter(kind => kind !== 'began' && kind !== 'not on yet')
 const makerKinds: readonly TellableKind[] = ['stripped', 'set aside', 'resumed', 'left out', 'dropped out', 'rejoined', 'gone', 'back', 'regrouped', 'cancelled', 'intake answered', 'air']
 
 function checkTeller(tx: Transaction, studioId: number, teller: Teller, kind: TellableKind, body: Record<string, unknown>, pieces: PieceRow[], now: number): Refusal | null {
@@ -170,7 +172,7 @@ function subjectsFor(tx: Transaction, studioId: number, request: ActRequest, bod
   const parts = tx.select({ id: part.id, pieceId: part.pieceId, into: part.intoPartId }).from(part).where(scoped(part, studioId, inArray(part.pieceId, ids))).orderBy(asc(part.id)).all()
   if (request.partIds?.some(id => !parts.some(each => each.id === id))) return malformed({ partIds: actRefusals.notInPiece })
   const step = typeof body.step === 'string' ? stepsNamed(tx, studioId, ids, body.step) : []
-  const minutes = workKinds.includes(request.kind) ? (typeof body.minutes === 'number' ? body.minutes : step[0]?.pieceMin ?? 0) : 0
+  const minutes = rowKinds.includes(request.kind) ? (typeof body.minutes === 'number' ? body.minutes : step[0]?.pieceMin ?? 0) : 0
   const times = spreadAlong(pieces.length, Date.parse(request.doneAt), minutes)
   return pieces.flatMap((each, index) => {
     const own = parts.filter(one => one.pieceId === each.id)

@@ -158,7 +158,7 @@ function readFixed(input: NonNullable<PlanInput['fixed']>[number], field: string
     if (chosen.length < choice.count || chosen.some(id => !choice.of.includes(id))) refuse(`${field}.resources`, `${choice.count} of ${choice.of.join(', ')}`, resources)
   }
   if (resources.length !== at) refuse(`${field}.resources`, `${at} resources, one for each choice`, resources)
-  return { activity: input.activity, start: wholeNumber(input.start, `${field}.start`), resources }
+  return { activity: input.activity, start: wholeNumber(input.start, `${field}.start`), resources, begun: input.begun ?? false }
 }
 
 /** Long enough for any order of the work: every minute and lag one after another, after the last release and opening. */
