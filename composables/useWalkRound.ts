@@ -1,4 +1,4 @@
-import { lostPieces, walkStops } from '#shared/walk-round'
+import { firstStop, lostPieces, walkStops } from '#shared/walk-round'
 import type { Expected } from '#shared/walk-round'
 
 /** The walk-round: which shelf one stands before, what was tapped as not there, and the telling of it. */
@@ -41,10 +41,14 @@ export function useWalkRound({ say, busy, studio }: ReturnType<typeof provideTel
     await say({ kind: 'moved', body: { placeId }, pieces: all.map(each => each.piece), partIds: all.flatMap(each => each.partIds), doneAt: studio.now.value })
     found.value = []
   }
-  function restart() {
+  /** Where the walk was taken up: nothing, or the shelf it goes on with. */
+  const takenUpAt = ref(0)
+  function begin(first: number) {
     route.value = stops.value.map(each => each.place.id)
-    go(0)
+    takenUpAt.value = first
+    go(first)
   }
-  watch(stops, () => { if (route.value.length === 0) restart() }, { immediate: true })
-  return { route, at, stop, done, tapped, found, missing, here, lost, tap: flip(tapped), find: flip(found), go, note, moveHere, restart, busy, studio }
+  const restart = () => begin(0)
+  watch(stops, () => { if (route.value.length === 0) begin(firstStop(stops.value, studio.now.value)) }, { immediate: true })
+  return { route, at, takenUpAt, stop, done, tapped, found, missing, here, lost, tap: flip(tapped), find: flip(found), go, note, moveHere, restart, busy, studio }
 }

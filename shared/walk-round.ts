@@ -26,6 +26,15 @@ export function walkStops(state: Pick<StudioState, 'places' | 'rooms' | 'pieces'
   })).filter(stop => stop.expected.length > 0)
 }
 
+/** How long a shelf that was gone past stays so: a walk is broken off for a call or a customer and taken up again (planning value), ms. */
+const brokenOff = 60 * 60_000
+
+/** Which stop to begin with: the first with something that was neither seen lately nor told missing, so that a walk that was broken off goes on where it stopped. `now` in ms UTC. */
+export function firstStop(stops: readonly Stop[], now: number): number {
+  const isOpen = ({ missing, seenAt }: Expected) => !missing && (seenAt === null || seenAt < now - brokenOff)
+  return Math.max(0, stops.findIndex(stop => stop.expected.some(isOpen)))
+}
+
 /** What was not found anywhere: what may stand on a shelf where nobody expects it. */
 export function lostPieces(stops: readonly Stop[], notHere: number): (Expected & { place: PlaceState })[] {
   return stops.flatMap(({ place, expected }) => place.id === notHere ? [] : expected.filter(each => each.missing).map(each => ({ ...each, place })))

@@ -3,6 +3,7 @@ export const walkWords = {
   title: 'Walk round',
   link: 'Walk round the shelves',
   intro: 'Shelf by shelf: tap what is not there, then go on.',
+  goesOn: 'The shelves before this one were seen within the hour.',
   failed: 'The shelves could not be fetched.',
   waiting: 'Fetching the shelves',
   none: 'Nothing stands anywhere',

@@ -50,6 +50,19 @@ describe('the time keys', () => {
     await keys.get('input[type="time"]').setValue('11:30')
     expect(keys.emitted('update:modelValue')?.at(-1)).toEqual([{ kind: 'at', at: Date.parse('2026-04-07T11:30:00Z') }])
   })
+
+  it('blame the day, not the time, where the day is to come or too long ago', async () => {
+    const keys = await mountSuspended(TimeKeys, { props: { modelValue: { kind: 'at', at: now }, zone: 'UTC', now } })
+    for (const day of ['2026-04-08', '2026-03-01']) {
+      await keys.get('input[type="date"]').setValue(day)
+      expect(keys.text()).toContain(controlWords.dayWrong(14))
+      expect(keys.text()).not.toContain(controlWords.timeWrong)
+      expect(keys.emitted('update:modelValue')?.at(-1)).toEqual([null])
+    }
+    await keys.get('input[type="date"]').setValue('2026-04-06')
+    expect(keys.text()).not.toContain(controlWords.dayWrong(14))
+    expect(keys.emitted('update:modelValue')?.at(-1)).toEqual([{ kind: 'at', at: Date.parse('2026-04-06T12:00:00Z') }])
+  })
 })
 
 describe('a key with a reason against it', () => {

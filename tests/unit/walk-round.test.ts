@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { StudioState } from '#shared/schemas/piece-state'
-import { lostPieces, walkStops } from '#shared/walk-round'
+import { firstStop, lostPieces, walkStops } from '#shared/walk-round'
 
 const part = (partId: number, name: string, seenAt: number | null, missingAt: number | null = null) => ({ partId, key: name, name, grip: null, seenAt, missingAt })
 const piece = (id: number, name: string, groups: { placeId: number | null, parts: ReturnType<typeof part>[] }[]) => ({ id, name, groups })
@@ -23,6 +23,17 @@ describe('the walk-round', () => {
     expect(rail?.expected).toMatchObject([{ name: 'Box, lid', partIds: [4], seenAt: 400, missing: true }])
     // The tray is fixed into the case and has no place of its own: it was seen with the case.
     expect(shelf?.expected).toMatchObject([{ name: 'Ledger 1', partIds: [1], seenAt: 500, missing: false }, { name: 'Box, case and tray', partIds: [2, 3], seenAt: 300, missing: false }])
+  })
+  it('goes on where it was broken off within the hour, and begins anew after it', () => {
+    const hour = 60 * 60_000
+    const [rail, shelf] = walkStops(state)
+    if (!rail || !shelf) throw new Error('two stops')
+    const seen = (stop: typeof rail, seenAt: number) => ({ ...stop, expected: stop.expected.map(each => ({ ...each, missing: false, seenAt })) })
+    expect(firstStop([seen(rail, hour), shelf], 1.5 * hour)).toBe(1)
+    expect(firstStop([seen(rail, hour), shelf], 2.5 * hour)).toBe(0)
+    // What was told missing is told; what all was seen is walked from the beginning.
+    expect(firstStop([rail, shelf], 2.5 * hour)).toBe(1)
+    expect(firstStop([seen(rail, hour), seen(shelf, hour)], 1.5 * hour)).toBe(0)
   })
   it('offers elsewhere what was not found', () => {
     expect(lostPieces(walkStops(state), 10).map(each => `${each.name} from ${each.place.name}`)).toEqual(['Box, lid from Rail'])
