@@ -11,6 +11,14 @@ export function wantedRung(piece: PieceState, film: FilmState): MilestoneName {
   return asked ?? (film.kind === 'glue-up' ? 'out-of-clamps' : film.kind === 'size' ? 'cured' : 'dry-to-handle')
 }
 
+/** The rung to test next: what the next step asks, and once that is reached the first that is not; null when all are. */
+export function nextRung(piece: PieceState, film: FilmState): MilestoneName | null {
+  const asked = wantedRung(piece, film)
+  const ahead = film.milestones.filter(rung => rung.reachedAt === null)
+  const next = (ahead.find(rung => rung.name === asked) ?? ahead[0])?.name
+  return milestoneNames.find(name => name === next) ?? null
+}
+
 /**
  * How the slowest of some films stands on the rung that hands wait for; null when there is none to speak of.
  * @param pick which films of a piece are meant

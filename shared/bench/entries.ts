@@ -1,8 +1,7 @@
-import { wantedRung } from '#shared/effects'
+import { nextRung } from '#shared/effects'
 import type { Job } from '#shared/hands'
 import { worstFilm } from '#shared/piece-strip'
 import type { FilmState, PieceState } from '#shared/schemas/piece-state'
-import { milestoneNames } from '#shared/terms'
 import type { MilestoneName } from '#shared/terms'
 import type { ReadPiece } from '#shared/verdict/piece'
 
@@ -16,13 +15,6 @@ export type BenchEntry = { id: string, kind: 'job', job: Job } | { id: string, k
 function jobIn(job: Job, roomId: number): Job | null {
   const pieces = job.pieces.filter(({ read, turn }) => read.piece.groups.some(group => group.parts.some(part => turn.turn.partIds.includes(part.partId)) && (group.roomId === roomId || group.roomId === null)))
   return pieces.length > 0 ? { ...job, pieces } : null
-}
-
-const nextRung = (piece: PieceState, film: FilmState): MilestoneName | null => {
-  const asked = wantedRung(piece, film)
-  const ahead = film.milestones.filter(rung => rung.reachedAt === null)
-  const next = (ahead.find(rung => rung.name === asked) ?? ahead[0])?.name
-  return milestoneNames.find(name => name === next) ?? null
 }
 
 interface WetFilm { piece: PieceState, film: FilmState, wanted: MilestoneName }

@@ -42,6 +42,17 @@ describe('a witness board', () => {
     expect(read?.pieces.map(piece => piece.id)).toEqual(pieceIds)
   })
 
+  it('asks for the next rung once the one that work waits for is reached', () => {
+    const { tell, board, actId, state } = paintedWithBoard()
+    const wanted = (at: number) => readWitnesses(state(at))[0]?.wanted
+    const first = wanted(now + 4 * hour)
+    if (!first) throw new Error('no rung')
+    tell({ milestone: first, reached: true, witnessId: board.id, coatActId: actId }, 'touch test', now + 5 * hour)
+    const then = readWitnesses(state(now + 6 * hour))[0]
+    expect(then?.wanted).not.toBe(first)
+    expect(then?.film.milestones.find(each => each.name === then.wanted)?.reachedAt).toBeNull()
+  })
+
   it('is tested like a piece: the coat is bound by it, and the bench learns with more doubt', () => {
     const { db, studioId, tell, board, actId } = paintedWithBoard()
     const first = db.select().from(coat).where(eq(coat.actId, actId)).all()
