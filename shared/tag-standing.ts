@@ -1,5 +1,6 @@
 import { standings } from '#shared/board'
 import type { Standing } from '#shared/board'
+import type { Job } from '#shared/hands'
 import type { TagFound } from '#shared/schemas/tag'
 import type { ReadPiece } from '#shared/verdict/piece'
 
@@ -14,6 +15,14 @@ export function standingsAt(tag: Tag, pieces: readonly ReadPiece[]): Standing[] 
 /** The pieces of which anything stands on a shelf or a carrier, in their order. */
 export function standsAt(tag: Tag, pieces: readonly ReadPiece[]): ReadPiece[] {
   return pieces.filter(read => read.piece.groups.some(group => tag.kind === 'place' ? group.placeId === tag.id : group.carrier === tag.name))
+}
+
+/** The work on what stands there: of a piece whose parts stand in several places, only that on the parts here. */
+export function jobsAt(tag: Tag, jobs: readonly Job[]): Job[] {
+  return jobs.flatMap((job) => {
+    const pieces = job.pieces.filter(({ read, turn: { turn } }) => turn.partIds.length === 0 || partsAt(tag, [read]).some(id => turn.partIds.includes(id)))
+    return pieces.length > 0 ? [{ ...job, pieces }] : []
+  })
 }
 
 /** The parts of those pieces that stand there, to be moved without what stands elsewhere. */
