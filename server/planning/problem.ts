@@ -169,13 +169,13 @@ function fixedOf(works: readonly StepWork[], facts: PlanFacts, toCome: WaitsToCo
   // Of several pins of one turn the first counts.
   const pins = new Map(facts.pins.filter(pin => pin.startsAt >= zeroAt).reverse().map(pin => [pin.turnId, pin]))
   const after = rowsInHand()
-  return works.flatMap(work => work.turns.flatMap((turn) => {
+  return works.flatMap(work => work.turns.flatMap((turn): Fixed[] => {
     const { step } = work
     const able = () => handsFor(work, facts, toCome, hands).filter(each => each.may(step.kind)).map(each => each.id)
     const chosen = (memberId: number | null) => chosenHands(able(), [...memberId === null ? [] : [memberId], ...last.get(turn.id)?.memberIds ?? []], step.hands)
     if (turn.status === 'doing' && turn.beganAt !== null) return [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, turn.beganAt, Math.floor) + after(step, turn), resources: chosen(turn.doingMemberId), begun: true }]
     const pinned = pins.get(turn.id)
-    return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId), begun: false }] : []
+    return pinned ? [{ activity: activityId(turn.id), start: minutesFrom(zeroAt, pinned.startsAt, Math.round), resources: chosen(pinned.memberId) }] : []
   }))
 }
 

@@ -90,7 +90,7 @@ export interface Job {
 }
 
 /** Work in hand or promised. Its start is a fact: no calendar, capacity or lag between fixed activities is asked of it. May be negative. `begun`: in hand, so nobody is told that its time does not fit. */
-export interface Fixed { readonly activity: string, readonly start: number, readonly resources: readonly string[], readonly begun: boolean }
+export interface Fixed { readonly activity: string, readonly start: number, readonly resources: readonly string[], readonly begun?: boolean }
 
 export const objectiveParts = ['windowsMissed', 'lateness', 'setup', 'waiting', 'moves', 'makespan'] as const
 export type ObjectivePart = typeof objectiveParts[number]

@@ -22,7 +22,7 @@ export const controlWords = {
   timeClock: 'Time',
   timeWanted: 'Give the time it was done.',
   timeWrong: 'Time: give hours and minutes, such as 13:40, not later than now.',
-  dayWrong: (back: number) => `Day: give today or one of the ${back} days before.`,
+  dayWrong: (back: number) => `Day: give today or ${back === 1 ? 'yesterday' : `one of the ${back} days before`}.`,
 } as const
 
 /** "10 min ago"; for a screen reader as for the eye. */

@@ -59,10 +59,20 @@ export function blockDayTime(block: Pick<PlanBlock, 'fromAt' | 'toAt'>, clock: C
   return { day, hours }
 }
 
+const hour = 60 * 60_000
+/** How coarsely an instant is told, by how far off it is, ms: what is ready by less than that before its work would be said to be ready after it. */
+const grains = [{ from: 7 * 24 * hour, grain: 24 * hour, says: 'a day' }, { from: 24 * hour, grain: 12 * hour, says: 'half a day' }, { from: 0, grain: hour / 4, says: 'a quarter of an hour' }]
+
+function readyNote({ readyAt, workAt }: Pick<PlanBlock, 'readyAt' | 'workAt'>, clock: Clock): string {
+  if (readyAt === null || readyAt <= clock.now) return 'What it waits for is ready.'
+  const told = grains.find(each => readyAt - clock.now >= each.from)
+  return told && workAt >= readyAt && workAt - readyAt < told.grain ? `Ready less than ${told.says} before.` : `Ready from ${roughTime(readyAt, clock, 'up')}.`
+}
+
 /** What is known of a block beside its time, one sentence each. */
-export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'lastStartAt' | 'with'>, clock: Clock): string[] {
+export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'workAt' | 'lastStartAt' | 'with'>, clock: Clock): string[] {
   return [
-    block.readyAt === null || block.readyAt <= clock.now ? 'What it waits for is ready.' : `Ready from ${roughTime(block.readyAt, clock, 'up')}.`,
+    readyNote(block, clock),
     ...block.with.length > 0 ? [`It takes ${block.with.length + 1} people at once: ${planStrips.with(block.with)}.`] : [],
     ...block.lastStartAt === null ? [] : [`${block.lastStartAt < clock.now ? 'The last moment to start has gone by' : 'Last moment to start'}: ${clockTime(block.lastStartAt, clock)}.`],
   ]
