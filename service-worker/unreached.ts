@@ -53,7 +53,7 @@ button:focus-visible { outline: 3px solid var(--ink); outline-offset: 3px; }
 
 /** The page as it is sent: made here whole, so that nothing of the studio is kept for it. */
 export function unreachedPage(nonce: string): Response {
-  const known: Known = { noTaps: words.noTaps, oneTap: words.oneTap, taps: words.taps(gap), tried: words.tried(gap), gap, shelves: [untoldShelves.own.acts, untoldShelves.bench.acts], tryMs }
+  const known: Known = { noTaps: words.taps(0), oneTap: words.taps(1), taps: words.taps(gap), tried: words.tried(gap), gap, shelves: [untoldShelves.own.acts, untoldShelves.bench.acts], tryMs }
   const html = `<!doctype html><html lang="en-GB"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width, initial-scale=1"><title>${words.title} · Stillwet</title><style nonce="${nonce}">${style}</style></head>
 <body><main><h1>${words.title}</h1><p>${words.says}</p><p><b id="taps"></b></p><p id="tried" role="status"></p><button id="again" type="button">${words.again}</button></main>
 <script nonce="${nonce}">(${watchStudio.toString()})(window, ${JSON.stringify(known).replaceAll('<', '\\u003c')})</script></body></html>`
