@@ -58,6 +58,28 @@ describe('what moved', () => {
     expect(moveText(told ?? [], { now: now + 20 * minute, zone }, 'metric')).toMatch(/^Turning over of Box 1 moves from .* to .*: Bench falls to 9 °C, and “First paint on the lid top” is not dry enough before .*\.$/)
   })
 
+  it('says of work that moves sooner which film lets it, and from when; in the air of before it would not', async () => {
+    const { studio, turnLid } = await painted()
+    const air = (at: number, tempC: number, rh: number) => {
+      studio.db.insert(reading).values({ studioId: studio.studioId, roomId: studio.rooms.bench, at, toldAt: at, tempC, rh, source: 'note' }).run()
+      studio.db.transaction(tx => predictPieces(tx, studio.studioId, null, at))
+    }
+    air(now + 20 * minute, 9, 0.75)
+    await planAt(studio, now + 20 * minute)
+    const was = startOf(studio, turnLid)
+    const stayed = { ...studio, db: copyAgain(studio.db) }
+    // Half an hour later the stove is lit.
+    air(now + 50 * minute, 21, 0.5)
+    for (const each of [studio, stayed]) expect(await replan(each.db, studio.studioId, now + 50 * minute, atOnce, true)).toMatchObject({ ok: true })
+    const is = startOf(studio, turnLid)
+    expect(was - is).toBeGreaterThan(hour / 2)
+    expect(startOf(stayed, turnLid)).toBeGreaterThan(is + hour / 2)
+    const why = whyOf(studio, turnLid, now + 50 * minute)
+    expect(why).toMatchObject({ code: 'film sooner', step: 'First paint on the lid top' })
+    expect(why?.code === 'film sooner' && why.readyAt <= is && why.readyAt < was).toBe(true)
+    stayed.db.$client.close()
+  })
+
   it('is told till the next working day is over, against what was first told, and goes when the turn comes back', async () => {
     const { studio, turnLid } = await painted()
     const { db, studioId } = studio
