@@ -65,6 +65,15 @@ describe('a start and a date', () => {
     const chosen = new Intl.DateTimeFormat('en-GB', { timeZone: 'UTC', day: 'numeric', month: 'short' }).format(new Date(tomorrow))
     await page.locator('figure text').filter({ hasText: new RegExp(`promise \\w+ ${chosen}$`, 'i') }).waitFor()
     expect(await axeProblems(page)).toEqual([])
+    // In letters twice as large the days at its ends stand beneath the drawing, not in its columns.
+    await page.evaluate(() => { document.documentElement.style.fontSize = '200%' })
+    const inColumns = await page.locator('figure').evaluate((figure) => {
+      const ground = figure.querySelector('line')?.getBoundingClientRect().bottom ?? Infinity
+      return [...figure.querySelectorAll('text, span')].filter(word => /^\w+ \d+ \w+$/.test(word.textContent ?? '')).map(word => word.getBoundingClientRect().top >= ground - 1)
+    })
+    expect(inColumns.length).toBeGreaterThan(0)
+    expect(inColumns).not.toContain(false)
+    await page.evaluate(() => { document.documentElement.style.fontSize = '' })
     await day.fill('')
     await page.getByRole('button', { name: 'Promise a day' }).click()
     await page.getByText('Choose the day that is promised.').waitFor()
