@@ -15,9 +15,12 @@ import { holdWords, putOnWords, sizeWords } from '#shared/words/put-on'
 /** The pieces that another page has chosen already, such as those of a shelf whose tag was read. */
 const askedPieces = (query: unknown) => typeof query === 'string' ? query.split(',').map(Number).filter(id => Number.isInteger(id) && id > 0) : []
 
+/** The names of the parts that it went on, where the other page means some alone. */
+const askedParts = (query: unknown): string[] => [query].flat().filter(name => typeof name === 'string')
+
 /** The parts and faces that something goes on, by their names: none named, all of them. A name that the chosen pieces do not have counts for nothing. */
-function useOnParts(reads: ComputedRef<readonly ReadPiece[]>) {
-  const partNames = ref<string[]>([])
+function useOnParts(reads: ComputedRef<readonly ReadPiece[]>, asked: string[]) {
+  const partNames = ref<string[]>(asked)
   const faceNames = ref<string[]>([])
   const { faces, failed, waits, again } = useFaces(reads)
   const parts = computed(() => partNamesOf(reads.value))
@@ -47,7 +50,7 @@ export function usePutOn({ say, busy, studio }: ReturnType<typeof provideTelling
   const material = computed((): RecentMaterialWire | null => all.value.find(each => each.versionId === materialId.value) ?? null)
   const places = computed(() => (studio.state.value ? piecesByPlace(studio.state.value, studio.pieces.value) : []))
   const reads = computed(() => studio.pieces.value.filter(read => chosen.value.includes(read.piece.id)))
-  const on = useOnParts(reads)
+  const on = useOnParts(reads, askedParts(useRoute().query.part))
   const parts = computed(() => (material.value ? putOnParts(on.meant.value.pieces, material.value, on.meant.value) : []))
 
   const sizes = coatSizes.map(value => ({ value, label: sizeWords[value] }))

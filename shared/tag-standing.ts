@@ -29,3 +29,10 @@ export function jobsAt(tag: Tag, jobs: readonly Job[]): Job[] {
 export function partsAt(tag: Tag, reads: readonly ReadPiece[]): number[] {
   return reads.flatMap(read => read.piece.groups.filter(group => tag.kind === 'place' ? group.placeId === tag.id : group.carrier === tag.name).flatMap(group => group.parts.map(part => part.partId)))
 }
+
+/** The names of the parts that stand there, where parts of those pieces stand elsewhere: what is put on there goes on these alone. None where all stand there whole. */
+export function partNamesAt(tag: Tag, reads: readonly ReadPiece[]): string[] {
+  const here = new Set(partsAt(tag, reads))
+  const parts = reads.map(read => read.piece.groups.flatMap(group => group.parts)).filter(own => own.length > 1).flat()
+  return parts.every(part => here.has(part.partId)) ? [] : [...new Set(parts.filter(part => here.has(part.partId)).map(part => part.name))]
+}

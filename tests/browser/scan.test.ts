@@ -18,6 +18,8 @@ let foreign: Browser
 let maker: Visitor
 let codes: { name: string, code: string }[]
 let pieceId: number
+/** Two shelves that nothing stands on at first. */
+let apart: number[]
 
 const codeOf = (name: string) => codes.find(each => each.name === name)?.code ?? ''
 /** A browser whose camera looks at one picture of a tag that was printed. */
@@ -32,7 +34,8 @@ beforeAll(async () => {
   maker = await joinAs(server.origin, owner, 'maker', 'moss@example.test')
   const { body: room } = await owner.post<{ id: number }>('/api/rooms', roomOf('Bench'))
   const placeOf = async (name: string, sort: number) => (await owner.post<{ id: number }>('/api/places', { roomId: room.id, name, kind: 'shelf', capacity: 20, sort })).body.id
-  const [shelf] = [await placeOf('Shelf A', 0), await placeOf('Shelf B', 1)]
+  const [shelf, , ...more] = [await placeOf('Shelf A', 0), await placeOf('Shelf B', 1), await placeOf('Shelf C', 2), await placeOf('Shelf D', 3)]
+  apart = more
   const started = await maker.post<{ pieceIds: number[] }>('/api/batches', { clientKey: 'scan-batch-1', name: 'Ledgers', scheduleId: null, pieces: ['Ledger 1', 'Ledger 2'], placeId: shelf, order: null, startsAt: new Date(Date.now() - 60_000).toISOString() })
   pieceId = started.body.pieceIds[0] ?? 0
   codes = (await maker.get<{ tags: { name: string, code: string }[] }>('/api/tags')).body.tags
@@ -127,6 +130,31 @@ describe('the letters on a tag', () => {
     await field.fill(codeOf('Shelf B').toLowerCase())
     await page.keyboard.press('Enter')
     await page.waitForURL(url => url.pathname === `/tag/${codeOf('Shelf B')}`)
+    await page.context().close()
+  })
+
+  it('of a shelf where a lid lies whose chest stands elsewhere choose the lid, from its page as well', async () => {
+    const [from, to] = apart
+    const { body: chest } = await maker.post<{ pieceIds: number[] }>('/api/batches', { clientKey: 'scan-chest-1', name: 'Chest', scheduleId: null, pieces: ['Chest'], placeId: from, order: null, startsAt: new Date(Date.now() - 60_000).toISOString(), parts: [{ name: 'Body', faces: [] }, { name: 'Lid', faces: [] }] })
+    const [id = 0] = chest.pieceIds
+    const { pieces } = (await maker.get<{ pieces: { id: number, version: number, groups: { parts: { partId: number, name: string }[] }[] }[] }>('/api/state')).body
+    const piece = pieces.find(each => each.id === id)
+    const lid = piece?.groups.flatMap(group => group.parts).find(part => part.name === 'Lid')?.partId
+    expect((await maker.post('/api/acts', { clientKey: 'scan-lid-moved', kind: 'moved', doneAt: new Date().toISOString(), pieces: [{ id, version: piece?.version }], partIds: [lid], body: { placeId: to } })).status).toBe(200)
+    const code = codeOf('Shelf D')
+    const chosenParts = (page: Page) => page.locator('#on-parts').getByRole('button').evaluateAll(keys => keys.filter(each => each.getAttribute('aria-pressed') === 'true').map(each => each.textContent?.trim()))
+    const { page, problems } = await open(foreign, '/put-on', {})
+    await key(page, 'Scan a tag').click()
+    await sheet(page).getByLabel('Letters on the tag').fill(code)
+    await key(page, 'Choose what stands there').click()
+    await page.getByText('Shelf D: one piece chosen.').waitFor()
+    await expect.poll(() => chosenParts(page)).toEqual(['Lid'])
+    await page.getByText('On lid: change').waitFor()
+    await visit(page, `/tag/${code}`)
+    await page.getByRole('link', { name: 'Put something on these' }).click()
+    await page.waitForURL(url => url.pathname === '/put-on')
+    await expect.poll(() => chosenParts(page)).toEqual(['Lid'])
+    expect(problems).toEqual([])
     await page.context().close()
   })
 

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { handsJobs } from '#shared/hands'
 import type { PieceState, TurnState } from '#shared/schemas/piece-state'
-import { jobsAt } from '#shared/tag-standing'
+import { jobsAt, partNamesAt, standsAt } from '#shared/tag-standing'
 import { clockAt, groupState, noon, pieceState, readAll, studioWith } from '../helpers/board'
 
 const work = (turnId: number, key: string, partIds: number[]): TurnState => ({
@@ -17,5 +17,17 @@ describe('the work at a tag', () => {
   it('is that of the parts that stand there, piece by piece', () => {
     expect(at(1)).toEqual(['rub the drawers: Chest 1'])
     expect(at(3)).toEqual(['rub the carcase: Chest 1, Chest 2'])
+  })
+})
+
+describe('the parts at a tag', () => {
+  const named = (piece: PieceState, names: string[]) => ({ ...piece, groups: piece.groups.map((group, index) => ({ ...group, parts: group.parts.map(part => ({ ...part, name: names[index] ?? '' })) })) })
+  const reads = readAll(studioWith([named(chest(1, 1), ['Drawers', 'Carcase']), named(chest(2, 3), ['Drawers', 'Carcase']), pieceState(3, 'Board 3', [groupState(31, 1)])]), noon)
+  const at = (id: number, pieces = reads) => partNamesAt({ kind: 'place', id, name: '' }, standsAt({ kind: 'place', id, name: '' }, pieces))
+  it('are named where others of the piece stand elsewhere, and not where all of it stands there', () => {
+    expect(at(1)).toEqual(['Drawers'])
+    expect(at(3)).toEqual(['Carcase', 'Drawers'])
+    expect(at(3, reads.slice(1))).toEqual([])
+    expect(at(1, reads.slice(2))).toEqual([])
   })
 })
