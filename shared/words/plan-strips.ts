@@ -70,8 +70,9 @@ function readyNote({ readyAt, workAt }: Pick<PlanBlock, 'readyAt' | 'workAt'>, c
 }
 
 /** What is known of a block beside its time, one sentence each. */
-export function blockNotes(block: Pick<PlanBlock, 'readyAt' | 'workAt' | 'lastStartAt' | 'with'>, clock: Clock): string[] {
+export function blockNotes(block: Pick<PlanBlock, 'fromAt' | 'readyAt' | 'workAt' | 'lastStartAt' | 'with'>, clock: Clock): string[] {
   return [
+    ...block.workAt > block.fromAt && block.workAt > clock.now ? [`Set-up comes first; the work itself begins at ${clockTime(block.workAt, clock)}, and that is the time to pin.`] : [],
     readyNote(block, clock),
     ...block.with.length > 0 ? [`It takes ${block.with.length + 1} people at once: ${planStrips.with(block.with)}.`] : [],
     ...block.lastStartAt === null ? [] : [`${block.lastStartAt < clock.now ? 'The last moment to start has gone by' : 'Last moment to start'}: ${clockTime(block.lastStartAt, clock)}.`],

@@ -30,18 +30,22 @@ describe('small sentences', () => {
     expect(blockTime({ fromAt: at('2026-04-07T22:00'), toAt: at('2026-04-08T00:30') }, clock)).toBe('22:00 to Wed 0:30')
   })
   it('say of a last moment whether it has gone by', () => {
-    const last = (lastStartAt: number) => blockNotes({ readyAt: null, workAt: clock.now, lastStartAt, with: [] }, clock)[1]
+    const last = (lastStartAt: number) => blockNotes({ readyAt: null, fromAt: clock.now, workAt: clock.now, lastStartAt, with: [] }, clock)[1]
     expect([last(at('2026-04-07T09:15')), last(at('2026-04-07T10:30'))]).toEqual(['The last moment to start has gone by: 9:15.', 'Last moment to start: 10:30.'])
   })
   it('never let work be ready after its own time, however coarsely that is told', () => {
-    const note = (readyAt: string, workAt: string) => blockNotes({ readyAt: at(readyAt), workAt: at(workAt), lastStartAt: null, with: [] }, clock)[0]
+    const note = (readyAt: string, workAt: string) => blockNotes({ readyAt: at(readyAt), fromAt: at(workAt), workAt: at(workAt), lastStartAt: null, with: [] }, clock)[0]
     expect(note('2026-04-09T08:10', '2026-04-09T08:35')).toBe('Ready less than half a day before.')
     expect(note('2026-04-16T09:00', '2026-04-16T15:00')).toBe('Ready less than a day before.')
     expect(note('2026-04-07T12:31', '2026-04-07T12:35')).toBe('Ready less than a quarter of an hour before.')
     expect(note('2026-04-09T08:10', '2026-04-10T08:30')).toBe('Ready from Thu afternoon.')
   })
+  it('say when the work itself begins where set-up comes before it', () => {
+    const first = (fromAt: string) => blockNotes({ readyAt: null, fromAt: at(fromAt), workAt: at('2026-04-08T08:35'), lastStartAt: null, with: [] }, clock)[0]
+    expect([first('2026-04-08T08:30'), first('2026-04-08T08:35')]).toEqual(['Set-up comes first; the work itself begins at Wed 8:35, and that is the time to pin.', 'What it waits for is ready.'])
+  })
   it('say of work for several people with whom it is done', () => {
-    expect(blockNotes({ readyAt: null, workAt: clock.now, lastStartAt: null, with: ['Jory', 'Moss'] }, clock)[1]).toBe('It takes 3 people at once: with Jory and Moss.')
+    expect(blockNotes({ readyAt: null, fromAt: clock.now, workAt: clock.now, lastStartAt: null, with: ['Jory', 'Moss'] }, clock)[1]).toBe('It takes 3 people at once: with Jory and Moss.')
   })
   it('have a true minus below nought', () => {
     expect(temperatureText(-3.25, 'metric')).toBe('−3.3 °C')
