@@ -101,7 +101,7 @@ describe('the doors', () => {
 
 describe('the service worker', () => {
   it('takes over the page it is registered from', async () => {
-    const { page } = await openPage(browser, server.origin)
+    const { page } = await openPage(browser, server.origin, { serviceWorkers: 'allow' })
     await visit(page, '/sign-in')
     const scope = await page.evaluate(async () => {
       await navigator.serviceWorker.register('/sw.js')
