@@ -2,29 +2,24 @@ import { and, eq } from 'drizzle-orm'
 import { describe, expect, it } from 'vitest'
 import { batch, closure, member, memberStepKind, openHours, plan, pin, pieceStep, planChange, planEntry, reading, turn } from '~~/db/schema'
 import { atOnce, replan } from '~~/server/planning/replan'
-import { movedTurns } from '~~/server/services/plan-moves'
 import { copyAgain } from '~~/server/utils/database'
 import { predictPieces } from '~~/server/work/predict'
-import { studioZone } from '#shared/time'
 import { likeMoves } from '#shared/plan-moves'
 import { causeText, moveText } from '#shared/words/plan-moves'
 import { plannedStudio } from '../../helpers/planned-studio'
 import { hour, minute } from '../../helpers/studio'
+import { movesAt, planAt, startOf, zone } from '../../helpers/told-moves'
+import type { PlannedStudio } from '../../helpers/told-moves'
 
 // A Tuesday.
 const now = Date.parse('2026-04-07T10:00:00Z')
-type Studio = ReturnType<typeof plannedStudio>
 
-const zone = studioZone('UTC')
-const turnOf = ({ db }: Studio, pieceId: number, key: string) => {
+const turnOf = ({ db }: PlannedStudio, pieceId: number, key: string) => {
   const found = db.select({ id: turn.id }).from(turn).innerJoin(pieceStep, eq(pieceStep.id, turn.stepId)).where(and(eq(pieceStep.pieceId, pieceId), eq(pieceStep.key, key), eq(turn.kind, 'work'))).get()
   if (!found) throw new Error(`There is no turn of ${key}.`)
   return found.id
 }
-const startOf = ({ db }: Studio, turnId: number) => db.select().from(planEntry).where(eq(planEntry.turnId, turnId)).get()?.startsAt ?? 0
-const planAt = async (studio: Studio, at: number) => expect(await replan(studio.db, studio.studioId, at, atOnce)).toMatchObject({ ok: true })
-const movesAt = (studio: Studio, at: number) => movedTurns(studio.db, studio.studioId, at, { open: studio.db.select().from(openHours).all(), closed: [] }, zone)
-const whyOf = (studio: Studio, turnId: number, at: number) => movesAt(studio, at).find(each => each.turnId === turnId)?.why
+const whyOf = (studio: PlannedStudio, turnId: number, at: number) => movesAt(studio, at).find(each => each.turnId === turnId)?.why
 
 /** A box whose lid has its first paint since ten, planned. */
 async function painted() {
@@ -266,62 +261,6 @@ describe('what moved', () => {
     pinAt(now + 4 * hour + 20 * minute)
     await planAt(studio, now + 2 * minute)
     expect(whyOf(studio, second?.turnId ?? 0, now + 2 * minute)).toMatchObject({ code: 'follows', startsAt: now + 4 * hour + 20 * minute })
-  })
-
-  /** A closure is entered early on its day, and told. */
-  async function shutOut() {
-    const early = now - 3 * hour
-    const studio = plannedStudio(early, 'painted-waxed-box', 6)
-    await planAt(studio, early)
-    const startsOf = ({ db }: Studio) => db.select({ turnId: planEntry.turnId, startsAt: planEntry.startsAt }).from(planEntry).orderBy(planEntry.turnId).all()
-    const before = startsOf(studio)
-    studio.db.insert(closure).values({ studioId: studio.studioId, memberId: null, name: 'Shut', fromDate: '2026-04-07', toDate: '2026-04-08' }).run()
-    await planAt(studio, early + minute)
-    const blamed = movesAt(studio, early + minute).filter(each => JSON.stringify(each.why).includes(JSON.stringify(shut)))
-    expect(blamed.length).toBeGreaterThan(1)
-    return { studio, early, before, blamed, startsOf }
-  }
-  const shut = { code: 'hours', name: null }
-
-  it('goes back to what people first heard when a closure is taken back; without that it stays as told', async () => {
-    const { studio, early, before, blamed, startsOf } = await shutOut()
-    const stayed = { ...studio, db: copyAgain(studio.db) }
-    studio.db.delete(closure).run()
-    for (const each of [studio, stayed]) await planAt(each, early + 2 * minute)
-    expect(startsOf(studio)).toEqual(before)
-    expect(movesAt(studio, early + 2 * minute)).toEqual([])
-    const whys = new Map(movesAt(stayed, early + 2 * minute).map(({ turnId, why }) => [turnId, why]))
-    expect(blamed.map(({ turnId }) => whys.get(turnId))).toEqual(blamed.map(({ why }) => why))
-    stayed.db.$client.close()
-  })
-
-  it('no longer gives a closure as a reason that has been taken back, where something else keeps the new times', async () => {
-    const { studio, early, blamed } = await shutOut()
-    const { db, studioId, members } = studio
-    // Whoever has arranged with the new times pins all that begins on the first day.
-    const first = Math.min(...blamed.map(each => each.isAt))
-    for (const { turnId, isAt } of blamed.filter(each => each.isAt < first + 4 * hour)) db.insert(pin).values({ studioId, turnId, startsAt: isAt, madeAt: early + minute, madeByMemberId: members.maker.id }).run()
-    db.delete(closure).run()
-    await planAt(studio, early + 2 * minute)
-    const kept = movesAt(studio, early + 2 * minute).filter(each => blamed.some(one => one.turnId === each.turnId && one.isAt === each.isAt))
-    expect(kept.some(({ why }) => JSON.stringify(why).includes(JSON.stringify({ code: 'ended', because: shut })))).toBe(true)
-    expect(kept.filter(({ why }) => JSON.stringify(why).replaceAll(JSON.stringify({ code: 'ended', because: shut }), '').includes(JSON.stringify(shut)))).toEqual([])
-    expect(causeText({ code: 'ended', because: { code: 'hours', name: null } }, { now, zone }, 'metric')).toBe('nobody who may do it worked at the old time, which has changed since; the plan has kept the new time')
-  })
-
-  it('goes back to what people first heard when a pin is taken away', async () => {
-    const early = now - 3 * hour
-    const studio = plannedStudio(early, 'oiled-bowl', 1)
-    const { db, studioId, members } = studio
-    await planAt(studio, early)
-    const before = db.select().from(planEntry).all().map(({ turnId, startsAt }) => ({ turnId, startsAt })).sort((a, b) => a.startsAt - b.startsAt)
-    db.insert(pin).values({ studioId, turnId: before[0]?.turnId ?? 0, startsAt: now + 4 * hour, madeAt: early, madeByMemberId: members.maker.id }).run()
-    await planAt(studio, early + minute)
-    expect(movesAt(studio, early + minute).length).toBeGreaterThan(1)
-    db.delete(pin).run()
-    await planAt(studio, early + 2 * minute)
-    expect(movesAt(studio, early + 2 * minute)).toEqual([])
-    for (const { turnId, startsAt } of before) expect(startOf(studio, turnId)).toBe(startsAt)
   })
 
   it('does not tell a start that went by in silence', async () => {
